@@ -1,0 +1,71 @@
+// Helpers of the commands in this folder. Plain JavaScript with nothing but Node's own modules: these commands run
+// on a machine where nothing is installed yet, so neither TypeScript nor a package can be counted on.
+import { spawn, spawnSync } from 'node:child_process';
+import { createHash } from 'node:crypto';
+import fs from 'node:fs';
+import path from 'node:path';
+import { fileURLToPath } from 'node:url';
+
+const root = path.resolve(path.dirname(fileURLToPath(import.meta.url)), '../..');
+
+/** Absolute path of a file or folder of the repository. */
+export const fromRoot = (...parts) => path.join(root, ...parts);
+
+/** Prints one line of progress. */
+export const say = (text) => console.log(`bidewell: ${text}`);
+
+/** Runs a command in the repository with its output on this terminal; gives its exit status (1 when it was killed or is missing). */
+export function run(command, args, env = {}) {
+  const { status, error } = spawnSync(command, args, {
+    cwd: root,
+    stdio: ['ignore', 'inherit', 'inherit'],
+    env: { ...process.env, ...env },
+  });
+  if (error) console.error(`bidewell: ${command}: ${error.message}`);
+  return status ?? 1;
+}
+
+/** As `run`, but ends this process with the same status when the command fails. */
+export function runOrExit(command, args, env) {
+  const status = run(command, args, env);
+  if (status !== 0) process.exit(status);
+}
+
+/** Whether a program of that name is on the PATH. */
+export function onPath(program) {
+  return (process.env.PATH ?? '')
+    .split(path.delimiter)
+    .some((folder) => folder && fs.existsSync(path.join(folder, program)));
+}
+
+/**
+ * Runs a long-lived command, hands SIGINT and SIGTERM on to it and ends with its status. A terminal sends Ctrl-C to
+ * the child as well; the server takes a second signal as 'now', so it is handed on only where the child has not had it.
+ */
+export function runAndFollow(command, args, env = {}) {
+  const child = spawn(command, args, { cwd: root, stdio: 'inherit', env: { ...process.env, ...env } });
+  for (const signal of ['SIGINT', 'SIGTERM']) {
+    process.on(signal, () => {
+      if (signal === 'SIGINT' && process.stdin.isTTY) return;
+      child.kill(signal);
+    });
+  }
+  child.on('exit', (status, signal) => process.exit(status ?? (signal === 'SIGKILL' ? 137 : 0)));
+  return child;
+}
+
+/** sha256 over the names and contents of files and folders (relative to the repository); missing ones count as empty. */
+export function stampOf(inputs) {
+  const hash = createHash('sha256');
+  const walk = (relative) => {
+    const file = fromRoot(relative);
+    if (!fs.existsSync(file)) return;
+    if (fs.statSync(file).isDirectory()) {
+      for (const name of fs.readdirSync(file).sort()) walk(path.join(relative, name));
+    } else {
+      hash.update(relative).update('\0').update(fs.readFileSync(file)).update('\0');
+    }
+  };
+  inputs.forEach(walk);
+  return hash.digest('hex');
+}

@@ -1,0 +1,19 @@
+import { cleanup } from '@testing-library/react';
+import { afterEach } from 'vitest';
+
+// Set by some runners; Reanimated would take its Jest path.
+delete process.env.JEST_WORKER_ID;
+
+// Reanimated asks for reduced motion while it is imported; jsdom has no matchMedia.
+window.matchMedia ??= (query: string): MediaQueryList => ({
+  matches: false,
+  media: query,
+  onchange: null,
+  addEventListener() {},
+  removeEventListener() {},
+  addListener() {},
+  removeListener() {},
+  dispatchEvent: () => false,
+});
+
+afterEach(() => cleanup());
