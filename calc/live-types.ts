@@ -1,0 +1,70 @@
+/** What the reckoning of a running charge takes and gives. Seconds count from the clip-on. */
+import type {
+  Band,
+  Doubt,
+  ModuleParameters,
+  PlanOption,
+  Segment,
+  SpareState,
+  TargetState,
+  WorkshopParameters,
+  ChannelParameters,
+  ResistorParameters,
+} from './plan-types';
+
+/** A reading while the charge runs or rests. */
+export interface LiveReading {
+  s: number;
+  terminalVolts: number | null;
+  amps: number | null;
+  celsius: number | null;
+  groupVolts: number[] | null;
+}
+
+/** Stretches in which current may flow: begin and end (null: still) of clip-on, hold, resume. */
+export interface RunStretch {
+  fromS: number;
+  toS: number | null;
+}
+
+export interface ReckonInput {
+  module: ModuleParameters;
+  spare: SpareState;
+  target: TargetState;
+  channels: ChannelParameters[];
+  resistors: ResistorParameters[];
+  workshop: WorkshopParameters;
+  option: PlanOption;
+  celsius: number;
+  runs: RunStretch[];
+  /** In order of time; late ones are sorted in by the caller. */
+  readings: LiveReading[];
+  /** End of current where a person has said it, s; null: as reckoned. */
+  currentOffAtS: number | null;
+  nowS: number;
+  seed: number;
+  samples?: number;
+}
+
+export interface Reckoning {
+  /** Stage by the numbers alone at `nowS`. */
+  stage: 'charging' | 'tapering' | 'resting' | 'check-due';
+  groups: { restVolts: number; soc: number; polarisationVolts: number; clipVolts: number }[];
+  /** Amps now by the model or the last reading; negative while discharging. */
+  amps: number;
+  terminalVolts: number;
+  deliveredAh: number;
+  plannedAh: number;
+  stepIndex: number;
+  /** Instants from clip-on, s. */
+  taperAtS: number | null;
+  currentEndS: number;
+  restEndS: number;
+  readyS: Band;
+  segments: Segment[];
+  laggingGroup: number | null;
+  lagVolts: number;
+  /** What the plan expects at the instant of the last reading, to stand beside it; null without one. */
+  expected: { s: number; terminalVolts: number; amps: number; celsius: number } | null;
+  dominant: Doubt;
+}

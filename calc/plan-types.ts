@@ -1,0 +1,310 @@
+/**
+ * What the planner takes and gives. Server and screens share these shapes; the server stores them with a charge.
+ *
+ * Seconds count from the moment of planning (0 = now) in a plan, and from the clip-on (0 = clipped on) in a stored option.
+ */
+import type { Direction, OcvTable } from './types';
+
+export type ChemistryId = 'nmc' | 'lmo-blend' | 'lfp' | 'lto' | 'nimh';
+export type Way = 'terminals' | 'group-by-group' | 'paralleled' | 'resistor';
+export type Finish = 'on-the-mark' | 'over-and-settle';
+/** Where a number comes from; it decides how wide its doubt is. */
+export type NumberSource = 'measured' | 'label' | 'guessed';
+/** Which resistance was typed: it decides the factor to the long one. */
+export type ResistanceKind = 'pulse-0.5s' | 'pulse-10s' | 'ac-1khz' | 'long';
+export type SpareCondition = 'sound' | 'swollen' | 'leaking' | 'dented' | 'water' | 'deep-discharged' | 'quarantined';
+
+export interface ModuleParameters {
+  chemistry: ChemistryId;
+  groupsInSeries: number;
+  cellsInParallel: number;
+  ratedAh: number;
+  /** Per group limits from the maker, V. */
+  chargeLimitVolts: number;
+  dischargeLimitVolts: number;
+  /** Below this a group is never charged here, V. */
+  floorVolts: number;
+  maxChargeAmps: number;
+  maxDischargeAmps: number;
+  minChargeCelsius: number;
+  maxChargeCelsius: number;
+  /** Per group, ohm; null: the chemistry's guess scaled by capacity. */
+  resistanceOhm: number | null;
+  resistanceKind: ResistanceKind;
+  linkResistanceOhm: number;
+  /** The workshop's own curve; null: the chemistry's. */
+  curve: OcvTable | null;
+  /** Share of rated capacity lost from the charge a month on the shelf; null: the chemistry's. */
+  selfDischargePerMonth: number | null;
+}
+
+export interface SpareState {
+  groupVolts: number[];
+  readingAgeS: number;
+  celsius: number | null;
+  /** Meter the spare was read with; null: not known. */
+  meterId: string | null;
+  /** Capacity of one group, Ah; per group where they were measured apart. */
+  capacityAh: number | number[];
+  capacitySource: NumberSource;
+  /** Standard deviation as a share of the capacity; null: the default of its source. */
+  capacityRelativeSd: number | null;
+  condition: SpareCondition;
+  quarantineReason: string | null;
+}
+
+export interface TargetState {
+  /** Rest voltage per group, V. */
+  volts: number;
+  toleranceVolts: number;
+  meterId: string | null;
+  celsius: number | null;
+  /** Standard error where it is known, V. */
+  sdVolts: number | null;
+}
+
+export interface ChannelParameters {
+  channelId: string;
+  /** As people say it: 'A1'. */
+  name: string;
+  maxAmps: number;
+  /** The least current it holds, A; on the mark cannot taper below it. */
+  minAmps: number;
+  maxVolts: number;
+  maxWatts: number | null;
+  /** The set voltage can be chosen. */
+  adjustableVolts: boolean;
+  /** Where it measures its voltage. */
+  senses: 'own-terminals' | 'module';
+  leadResistanceOhm: number;
+  displayStepVolts: number;
+  singleGroup: boolean;
+  canDischarge: boolean;
+  dischargeAmps: number | null;
+  loadOhm: number | null;
+  /** Seconds from now until it is free. */
+  freeInS: number;
+  /** Meter cross-checked with the workshop's, mV; null: never. */
+  offsetSdVolts: number | null;
+}
+
+export interface ResistorParameters {
+  resistorId: string;
+  name: string;
+  ohm: number;
+  maxWatts: number;
+}
+
+/** A module of known charge that a resistor may join to the spare. */
+export interface NeighbourState {
+  label: string;
+  groupVolts: number[];
+  capacityAh: number;
+}
+
+export interface WorkshopParameters {
+  minRestS: number;
+  lookInIntervalS: number;
+  /** Inrush on joining groups, as a multiple of one group's capacity per hour. */
+  inrushLimitC: number;
+  /** Hands-on times, s. */
+  clipOnS: number;
+  clipOffS: number;
+  checkS: number;
+  busbarsS: number;
+  /** Seconds from now at which nobody is there any more today; null: not known. */
+  closesInS: number | null;
+}
+
+export interface PlanInput {
+  module: ModuleParameters;
+  spare: SpareState;
+  target: TargetState;
+  channels: ChannelParameters[];
+  resistors: ResistorParameters[];
+  neighbour: NeighbourState | null;
+  workshop: WorkshopParameters;
+  /** Seconds from now at which the module is to be ready; null: as soon as can be. */
+  readyByS: number | null;
+  /** Seconds from now of the clip-on; 0: now. */
+  clipOnAtS: number;
+  celsius: number;
+  /** Seed of the sample set; the same seed gives the same band to the last digit. */
+  seed: number;
+  /** Samples of the band; default 64. */
+  samples?: number;
+}
+
+export interface Band {
+  p10: number;
+  p50: number;
+  p90: number;
+}
+
+export type SegmentKind = 'queue' | 'hands' | 'cc' | 'taper' | 'rest' | 'check';
+
+export interface Segment {
+  kind: SegmentKind;
+  fromS: number;
+  toS: number;
+}
+
+export type StepKind = 'pre-level' | 'bulk' | 'trim';
+
+/** One connection held for one stretch of current; a charge is an ordered list of these. */
+export interface PlannedStep {
+  kind: StepKind;
+  way: Way;
+  channelIds: string[];
+  resistorId: string | null;
+  /** 0-based groups it moves; all of them in a bulk step through the terminals. */
+  groupIndexes: number[];
+  direction: Direction;
+  /** Seconds of current, from the start of the option. */
+  startS: number;
+  stopS: number;
+  /** What to dial in: volts and amps at the charger. */
+  setVolts: number | null;
+  setAmps: number | null;
+  /** Where it stops by count, Ah at the terminals; on the mark this is only expected. */
+  ampHours: number;
+  wattHours: number;
+  endAmps: number;
+  voltageLimitAtS: number | null;
+  /** Rest voltages per group after it has settled, V (of all groups of the module). */
+  restVoltsAfter: number[];
+}
+
+export interface TracePlanPoint {
+  s: number;
+  amps: number;
+  /** Mean of the groups under current, V. */
+  clipVolts: number;
+  /** Mean rest voltage of the groups, V. */
+  restVolts: number;
+}
+
+export type Doubt =
+  'capacity' | 'resistance' | 'current' | 'spare-reading' | 'target-reading' | 'curve' | 'temperature';
+
+export interface Caution {
+  code:
+    | 'flat-curve'
+    | 'hysteresis'
+    | 'old-reading'
+    | 'other-meter'
+    | 'group-spread'
+    | 'high-rate'
+    | 'busbars-off'
+    | 'unattended'
+    | 'cold-or-warm'
+    | 'unknown-health'
+    | 'curve-extended'
+    | 'inrush'
+    | 'ends-apart'
+    | 'no-adjustable-volts'
+    | 'thin-leads'
+    | 'meter-unchecked';
+  /** One sentence for a person. */
+  text: string;
+}
+
+export interface PlanOption {
+  /** Stable within a plan: way, finish and channels. */
+  id: string;
+  way: Way;
+  finish: Finish;
+  direction: Direction;
+  channelIds: string[];
+  /** 'B1 · 20 A' */
+  channelText: string;
+  amps: number;
+  steps: PlannedStep[];
+  /** From clip-on (option's 0) to ready: hands, current, rest and check. */
+  totalS: Band;
+  /** The likely run, for the ribbon; starts at 0. */
+  segments: Segment[];
+  trace: TracePlanPoint[];
+  /** Rest-voltage band for the picture: p10/p90 of the mean rest voltage at the trace's moments. */
+  ampHours: number;
+  wattHours: number;
+  handsOnS: number;
+  busbarsOff: boolean;
+  /** What is taken apart or set up, one sentence. */
+  takes: string;
+  /** Difference between highest and lowest group after the rest, V. */
+  endSpreadVolts: number;
+  /** Rest voltage per group after the rest, V. */
+  endGroupVolts: number[];
+  /** What the charger is set to in the bulk step, V; null for a resistor. */
+  setVolts: number | null;
+  /** The highest set voltage that keeps a forgotten charger safe, V over the module (bulk step). */
+  setVoltsCap: number | null;
+  restS: number;
+  /** Latest clip-on so that it is ready by the wished time with 90 %, s from planning; null without a wish. */
+  latestStartS: number | null;
+  /** Cannot be ready by the wished time even when clipped on at `clipOnAtS`. */
+  tooLate: boolean;
+  soonest: boolean;
+  soonestBusbarsStay: boolean;
+  dominant: Doubt;
+  /** How many seconds the 10–90 % band would narrow were the dominant number known. */
+  narrowsByS: number;
+  cautions: Caution[];
+}
+
+export interface RuledOutWay {
+  way: Way;
+  finish: Finish;
+  channelId: string | null;
+  channelName: string | null;
+  reason: string;
+}
+
+export interface Refusal {
+  code:
+    | 'deep-discharged'
+    | 'reversed'
+    | 'temperature'
+    | 'condition'
+    | 'target-over-limit'
+    | 'target-under-limit'
+    | 'ceiling'
+    | 'numbers'
+    | 'quarantined';
+  /** 0-based, where one group is the reason. */
+  group: number | null;
+  text: string;
+}
+
+export interface ChargePlan {
+  direction: Direction;
+  /** Sorted, soonest first. */
+  options: PlanOption[];
+  ruledOut: RuledOutWay[];
+  /** Not empty: this spare cannot be charged to this target here at all; `options` is empty then. */
+  refusals: Refusal[];
+  cautions: Caution[];
+  /** Charge each group takes, Ah. */
+  groupAmpHours: number[];
+  /** The spare's rest voltages after its days on the shelf, V. */
+  startVolts: number[];
+}
+
+/** A plain verdict after the rest. */
+export interface GroupVerdict {
+  group: number;
+  volts: number;
+  /** Volts minus target, V. */
+  deviationVolts: number;
+  within: boolean;
+  /** Charge still to bring in (positive) or take out, Ah. */
+  ampHoursToGo: number;
+}
+
+export interface CheckVerdict {
+  within: boolean;
+  groups: GroupVerdict[];
+  spreadVolts: number;
+  worstGroup: number;
+}

@@ -1,0 +1,24 @@
+import * as z from 'zod/mini';
+import { id, type Instant, type PersonRef } from './common';
+
+export const alertKinds = ['charge-done', 'check-due', 'overdue', 'look-in-due', 'step-swap'] as const;
+export type AlertKind = (typeof alertKinds)[number];
+
+export interface AlertDto {
+  id: string;
+  kind: AlertKind;
+  level: 'tell' | 'amber' | 'alarm';
+  chargeId: string;
+  title: string;
+  /** Whom it is for first. */
+  for: PersonRef | null;
+  seen: string;
+  checkFirst: string;
+  raisedAt: Instant;
+  takenBy: PersonRef | null;
+  takenAt: Instant | null;
+  /** The cause is gone. */
+  clearedAt: Instant | null;
+}
+
+export const passAlertSchema = z.object({ personId: id });

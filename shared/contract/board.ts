@@ -1,0 +1,20 @@
+import type { Instant } from './common';
+import type { ChargeCardDto } from './charge';
+
+export interface BoardChannelDto {
+  id: string;
+  name: string;
+  maxAmps: number;
+  chargeTitle: string | null;
+}
+
+/** All that the bench and the wall show. `rev` rises by one with every change of the workshop's charges. */
+export interface BoardDto {
+  rev: number;
+  at: Instant;
+  workshop: { id: string; name: string; zone: string };
+  charges: ChargeCardDto[];
+  channels: BoardChannelDto[];
+  /** Night dimming of the wall outside these hours today; null: closed today. */
+  openToday: { from: Instant; to: Instant } | null;
+}

@@ -1,0 +1,241 @@
+import * as z from 'zod/mini';
+import { id, instant, optionalText, reason, type Instant, type PersonRef } from './common';
+import type { CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
+import { groupVolts, groupVoltsList, optionalQuantity } from './quantity';
+
+export const stages = [
+  'planned',
+  'queued',
+  'charging',
+  'discharging',
+  'tapering',
+  'resting',
+  'check-due',
+  'ready',
+  'fitted',
+  'shelved',
+  'held',
+  'stopped',
+] as const;
+export type Stage = (typeof stages)[number];
+/** Stages in which the charge holds its spare (and stands on the bench). */
+export const openStages = [
+  'planned',
+  'queued',
+  'charging',
+  'discharging',
+  'tapering',
+  'resting',
+  'check-due',
+  'ready',
+  'held',
+] as const satisfies readonly Stage[];
+export const runningStages = ['charging', 'discharging', 'tapering'] as const satisfies readonly Stage[];
+
+/** The checks before clipping on, in their order. */
+export const checkCodes = [
+  'isolation',
+  'polarity',
+  'condition',
+  'temperature',
+  'ceiling',
+  'ventilation',
+  'attendance',
+] as const;
+export type CheckCode = (typeof checkCodes)[number];
+
+export const answerCheckSchema = z.object({
+  code: z.enum(checkCodes),
+  /** 'yes' lets the charge go on, 'no' rules it out until it is changed. */
+  answer: z.enum(['yes', 'no']),
+  note: z.optional(optionalText('The note', 200)),
+});
+export type AnswerCheckInput = z.infer<typeof answerCheckSchema>;
+
+const atNow = z.optional(instant);
+
+export const startChargeSchema = z.object({ at: atNow });
+export const queueChargeSchema = z.object({ clipOnAt: z.nullable(instant) });
+export const holdSchema = z.object({ reason, at: atNow });
+export const resumeSchema = z.object({ at: atNow });
+export const stopSchema = z.object({ reason, at: atNow, quarantine: z.optional(z.boolean()) });
+export const currentOffSchema = z.object({ at: atNow });
+export const handOverSchema = z.object({ personId: id });
+export const lookInSchema = z.object({ note: z.optional(optionalText('The note', 200)) });
+
+const readingShape = {
+  at: atNow,
+  terminalVolts: optionalQuantity({ name: 'Volts', unit: 'V', min: 0, max: 150 }),
+  amps: optionalQuantity({ name: 'Amps', unit: 'A', min: -2000, max: 2000 }),
+  celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 120 }),
+  groupVolts: z.optional(z.nullable(groupVoltsList)),
+  meterId: z.optional(z.nullable(id)),
+};
+/** At least one number; which of them is up to what can be read. */
+export const readingSchema = z.object(readingShape).check(
+  z.refine(
+    (r) => r.terminalVolts !== null || r.amps !== null || r.celsius !== null || (r.groupVolts ?? null) !== null,
+    {
+      message: 'Type at least one number that was read.',
+      path: ['terminalVolts'],
+    },
+  ),
+);
+export type ReadingInput = z.infer<typeof readingSchema>;
+/** A correction keeps the old reading and says why. */
+export const correctReadingSchema = z.object({ ...readingShape, reason: z.optional(optionalText('The reason', 300)) });
+
+export const restCheckSchema = z.object({
+  groupVolts: groupVoltsList,
+  celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 90 }),
+  meterId: z.nullable(id),
+  at: atNow,
+});
+export type RestCheckInput = z.infer<typeof restCheckSchema>;
+
+export const fitSchema = z.object({ note: z.optional(optionalText('The note')) });
+export const shelveSchema = z.object({
+  shelfPlace: optionalText('The shelf place', 30),
+  note: z.optional(optionalText('The note')),
+});
+export const topUpSchema = z.object({ targetVolts: z.optional(groupVolts) });
+
+export interface InstantBand {
+  early: Instant;
+  likely: Instant;
+  late: Instant;
+}
+
+export interface TimedSegment {
+  kind: SegmentKind;
+  from: Instant;
+  to: Instant;
+}
+
+export interface LookInDto {
+  id: string;
+  dueAt: Instant;
+  doneAt: Instant | null;
+  by: PersonRef | null;
+}
+
+/** A charge as the board, the bench and the wall show it. */
+export interface ChargeCardDto {
+  id: string;
+  /** 'C-0147' */
+  number: string;
+  /** The repair where there is one, else the number. */
+  title: string;
+  repairRef: string | null;
+  modulePosition: string | null;
+  spare: { id: string; label: string };
+  typeName: string;
+  /** Window of the type, V per group. */
+  chargeLimitVolts: number;
+  dischargeLimitVolts: number;
+  channelNames: string[];
+  person: PersonRef | null;
+  stage: Stage;
+  /** Stage it was in when it was held. */
+  heldFrom: Stage | null;
+  direction: Direction;
+  way: Way;
+  finish: Finish;
+  targetVolts: number;
+  toleranceVolts: number;
+  groups: { volts: number; reckoned: boolean; fromVolts: number; clipVolts: number | null }[];
+  laggingGroup: number | null;
+  lagVolts: number;
+  amps: number | null;
+  clipOnAt: Instant;
+  startedAt: Instant | null;
+  segments: TimedSegment[];
+  ready: InstantBand | null;
+  plannedReady: InstantBand;
+  readyBy: Instant | null;
+  taperAt: Instant | null;
+  currentEndAt: Instant | null;
+  checkDueAt: Instant | null;
+  readyAt: Instant | null;
+  /** Since when it is late against its plan (or its check waits too long); null: not late. */
+  overdueSince: Instant | null;
+  heldAt: Instant | null;
+  stoppedAt: Instant | null;
+  lookIns: LookInDto[];
+  nextLookInAt: Instant | null;
+  lastReadingAt: Instant | null;
+  /** Says what waits for a hand within the charge: 'Swap to group 2'. */
+  nextHand: string | null;
+  rev: number;
+}
+
+export interface CheckItemDto {
+  code: CheckCode;
+  /** 'data': answered by the numbers and locked; 'ruled-out': the numbers forbid; 'person': to be answered. */
+  by: 'person' | 'data' | 'ruled-out';
+  title: string;
+  question: string;
+  detail: string;
+  yes: string;
+  no: string;
+  answer: 'yes' | 'no' | null;
+  answeredBy: PersonRef | null;
+  answeredAt: Instant | null;
+  note: string | null;
+}
+
+export interface ReadingDto {
+  id: string;
+  at: Instant;
+  terminalVolts: number | null;
+  amps: number | null;
+  celsius: number | null;
+  groupVolts: number[] | null;
+  meterId: string | null;
+  by: PersonRef;
+  source: 'typed';
+  /** Not null: this one is replaced by that one. */
+  replacedBy: string | null;
+  replaces: string | null;
+  reason: string | null;
+  mayCorrect: boolean;
+}
+
+export interface ChargeEventDto {
+  id: string;
+  at: Instant;
+  kind: string;
+  by: PersonRef | null;
+  text: string;
+}
+
+export interface RestCheckDto {
+  id: string;
+  at: Instant;
+  by: PersonRef;
+  groupVolts: number[];
+  celsius: number | null;
+  verdict: CheckVerdict;
+}
+
+export interface ChargeDto extends ChargeCardDto {
+  option: PlanOption;
+  moduleTypeId: string;
+  shelfPlace: string | null;
+  meterId: string | null;
+  minRestS: number;
+  deliveredAh: number;
+  plannedAh: number;
+  stepIndex: number;
+  expected: { at: Instant; terminalVolts: number; amps: number; celsius: number } | null;
+  checks: CheckItemDto[];
+  /** Sentence why the timer cannot be started yet; null: it can. */
+  startBlockedBy: string | null;
+  readings: ReadingDto[];
+  restChecks: RestCheckDto[];
+  events: ChargeEventDto[];
+  dominant: string | null;
+  createdAt: Instant;
+  /** Address the label's QR shows. */
+  labelUrl: string;
+}

@@ -1,0 +1,55 @@
+/** Roles are lists of capabilities; routes and sockets name the capability they need, never a role. */
+export const roles = ['technician', 'foreman', 'manager'] as const;
+export type Role = (typeof roles)[number];
+
+export const capabilities = [
+  'board:read',
+  'stock:read',
+  'stock:write',
+  'spare:quarantine',
+  'spare:release',
+  'equipment:read',
+  'equipment:write',
+  'charge:plan',
+  'charge:run',
+  'charge:correct-any',
+  'charge:assign',
+  'alert:take',
+  'wall:approve',
+  'wall:revoke',
+  'waits:read',
+  'people:read',
+  'people:write',
+  'workshop:write',
+] as const;
+export type Capability = (typeof capabilities)[number];
+
+const technician: Capability[] = [
+  'board:read',
+  'stock:read',
+  'stock:write',
+  'spare:quarantine',
+  'equipment:read',
+  'charge:plan',
+  'charge:run',
+  'alert:take',
+  'people:read',
+];
+const foreman: Capability[] = [
+  ...technician,
+  'spare:release',
+  'charge:correct-any',
+  'charge:assign',
+  'wall:approve',
+  'wall:revoke',
+  'waits:read',
+];
+const manager: Capability[] = [...foreman, 'equipment:write', 'people:write', 'workshop:write'];
+
+export const roleCapabilities: Record<Role, readonly Capability[]> = { technician, foreman, manager };
+
+/** True where the role holds the capability. */
+export const can = (role: Role, capability: Capability): boolean => roleCapabilities[role].includes(capability);
+
+/** The least role that holds a capability, for the sentence on a forbidden screen. */
+export const leastRoleWith = (capability: Capability): Role => roles.find((role) => can(role, capability)) ?? 'manager';

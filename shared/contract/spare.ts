@@ -1,0 +1,77 @@
+import * as z from 'zod/mini';
+import { id, instant, optionalText, reason, text, type Instant, type PersonRef } from './common';
+import { groupVoltsList, optionalQuantity } from './quantity';
+
+export const conditions = ['sound', 'swollen', 'leaking', 'dented', 'water', 'deep-discharged'] as const;
+export const conditionNames: Record<(typeof conditions)[number], string> = {
+  sound: 'Sound',
+  swollen: 'Swollen',
+  leaking: 'Leaking',
+  dented: 'Dented',
+  water: 'Water got in',
+  'deep-discharged': 'Deep-discharged',
+};
+export const numberSources = ['measured', 'label', 'guessed'] as const;
+
+export const spareReadingSchema = z.object({
+  groupVolts: groupVoltsList,
+  celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 90 }),
+  meterId: z.nullable(id),
+  at: z.optional(instant),
+  note: z.optional(optionalText('The note')),
+});
+export type SpareReadingInput = z.infer<typeof spareReadingSchema>;
+
+export const spareSchema = z.object({
+  label: text('The label', 30),
+  moduleTypeId: id,
+  shelfPlace: optionalText('The shelf place', 30),
+  /** Measured Ah of a group; empty: rated times health. */
+  capacityAh: optionalQuantity({ name: 'Capacity', unit: 'Ah', min: 0, aboveMin: true, max: 1000 }),
+  healthPercent: optionalQuantity({ name: 'Health', unit: '%', min: 5, max: 120 }),
+  capacitySource: z.enum(numberSources),
+  condition: z.enum(conditions),
+  note: optionalText('The note'),
+});
+export type SpareInput = z.infer<typeof spareSchema>;
+
+/** A new spare comes with its first reading. */
+export const newSpareSchema = z.object({ ...spareSchema.shape, reading: spareReadingSchema });
+export type NewSpareInput = z.infer<typeof newSpareSchema>;
+
+export const quarantineSchema = z.object({ reason });
+
+export type SpareWhere = 'shelf' | 'charge' | 'quarantine' | 'fitted';
+
+export interface SpareReadingDto {
+  id: string;
+  at: Instant;
+  groupVolts: number[];
+  celsius: number | null;
+  meterId: string | null;
+  by: PersonRef;
+  note: string | null;
+}
+
+export interface SpareDto extends SpareInput {
+  id: string;
+  typeName: string;
+  groupsInSeries: number;
+  chargeLimitVolts: number;
+  dischargeLimitVolts: number;
+  floorVolts: number;
+  shelfVolts: number | null;
+  where: SpareWhere;
+  /** Capacity used in plans, Ah, and its standard deviation. */
+  usedCapacityAh: number;
+  capacitySdAh: number;
+  quarantine: { reason: string; at: Instant; by: PersonRef } | null;
+  charge: { id: string; title: string; stage: string } | null;
+  reading: SpareReadingDto | null;
+  rev: number;
+}
+
+export interface SpareHistoryDto {
+  readings: SpareReadingDto[];
+  charges: { id: string; title: string; stage: string; at: Instant; targetVolts: number }[];
+}

@@ -1,0 +1,30 @@
+import * as z from 'zod/mini';
+import { text } from './common';
+import { quantity } from './quantity';
+import { zone } from './session';
+
+const time = z.string().check(z.regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Type the time like 08:00.'));
+
+/** One day's opening; null: closed. Index 0 is Monday. */
+export const dayHours = z.nullable(
+  z
+    .object({ from: time, to: time })
+    .check(z.refine((day) => day.from < day.to, { message: 'Closing must come after opening.', path: ['to'] })),
+);
+
+export const workshopSettingsSchema = z.object({
+  name: text('The workshop’s name', 80),
+  zone,
+  workingHours: z.array(dayHours).check(z.length(7, 'Seven days, Monday first.')),
+  toleranceMillivolts: quantity({ name: 'Tolerance', unit: 'mV', min: 1, max: 50 }),
+  minRestMinutes: quantity({ name: 'Rest', unit: 'min', min: 0, max: 1440, whole: true }),
+  lookInMinutes: quantity({ name: 'Look-in interval', unit: 'min', min: 5, max: 480, whole: true }),
+  inrushLimitC: quantity({ name: 'Inrush limit', unit: 'C', min: 0.05, max: 10 }),
+  lagLimitMillivolts: quantity({ name: 'Lag limit', unit: 'mV', min: 1, max: 200 }),
+});
+export type WorkshopSettings = z.infer<typeof workshopSettingsSchema>;
+
+export interface WorkshopDto extends WorkshopSettings {
+  id: string;
+  rev: number;
+}
