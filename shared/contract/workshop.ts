@@ -28,3 +28,4 @@ export interface WorkshopDto extends WorkshopSettings {
   id: string;
   rev: number;
 }
+export type DayHours = z.infer<typeof dayHours>;

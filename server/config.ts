@@ -1,0 +1,67 @@
+import fs from 'node:fs';
+import path from 'node:path';
+import * as z from 'zod';
+
+const flag = z
+  .enum(['on', 'off'])
+  .default('on')
+  .transform((value) => value === 'on');
+
+const environment = z.object({
+  PORT: z.coerce.number().int().min(0).max(65535).default(4300),
+  BIDEWELL_HOST: z.string().min(1).optional(),
+  BIDEWELL_DATA: z.string().min(1).default('data'),
+  BIDEWELL_DEMO: flag,
+  BIDEWELL_WEB: z.string().min(1).default('dist'),
+  BIDEWELL_TLS_CERT: z.string().min(1).optional(),
+  BIDEWELL_TLS_KEY: z.string().min(1).optional(),
+  /** Proxies in front of the server whose forwarded headers are believed. */
+  BIDEWELL_PROXY_HOPS: z.coerce.number().int().min(0).max(5).default(0),
+  /** The address people open, where it is not the one the server listens on. */
+  BIDEWELL_URL: z.url().optional(),
+  BIDEWELL_LOG: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
+  METRO_PORT: z.coerce.number().int().optional(),
+});
+
+export interface Config {
+  port: number;
+  host: string;
+  dataDir: string;
+  webDir: string;
+  demo: boolean;
+  tls: { cert: string; key: string } | null;
+  proxyHops: number;
+  publicUrl: string | null;
+  logLevel: string;
+  metroPort: number | null;
+}
+
+/**
+ * Reads and checks the environment once.
+ * @throws Error naming the variable and what it may be.
+ */
+export function readConfig(env: NodeJS.ProcessEnv): Config {
+  const parsed = environment.safeParse(env);
+  if (!parsed.success)
+    throw new Error(parsed.error.issues.map((issue) => `${issue.path.join('.')}: ${issue.message}`).join('\n'));
+  const e = parsed.data;
+  if (Boolean(e.BIDEWELL_TLS_CERT) !== Boolean(e.BIDEWELL_TLS_KEY))
+    throw new Error('BIDEWELL_TLS_CERT and BIDEWELL_TLS_KEY belong together: set both or none.');
+  const tls =
+    e.BIDEWELL_TLS_CERT && e.BIDEWELL_TLS_KEY
+      ? { cert: fs.readFileSync(e.BIDEWELL_TLS_CERT, 'utf8'), key: fs.readFileSync(e.BIDEWELL_TLS_KEY, 'utf8') }
+      : null;
+  return {
+    port: e.PORT,
+    // A demo with one-tap sign-in is for this machine only, unless somebody says otherwise.
+    host: e.BIDEWELL_HOST ?? (e.BIDEWELL_DEMO ? '127.0.0.1' : '0.0.0.0'),
+    dataDir: path.resolve(e.BIDEWELL_DATA),
+    webDir: path.resolve(e.BIDEWELL_WEB),
+    demo: e.BIDEWELL_DEMO,
+    tls,
+    proxyHops: e.BIDEWELL_PROXY_HOPS,
+    publicUrl: e.BIDEWELL_URL ?? null,
+    logLevel: e.BIDEWELL_LOG,
+    metroPort: e.METRO_PORT ?? null,
+  };
+}

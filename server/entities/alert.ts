@@ -1,0 +1,54 @@
+import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import type { AlertKind } from '@/shared/contract/alert';
+import { idColumn, instantColumn, optionalIdColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+
+/** One alert a cause; the cause key makes it so across restarts. */
+@Entity({ name: 'alert' })
+@Unique('uq_alert_cause', ['cause'])
+@Index('ix_alert_open', ['workshopId', 'clearedAt', 'raisedAt'])
+export class Alert {
+  @PrimaryColumn(idColumn('id'))
+  id!: string;
+
+  @Column(idColumn('workshop_id'))
+  workshopId!: string;
+
+  @Column(textColumn('cause'))
+  cause!: string;
+
+  @Column(textColumn('kind'))
+  kind!: AlertKind;
+
+  @Column(textColumn('level'))
+  level!: 'tell' | 'amber' | 'alarm';
+
+  @Column(idColumn('charge_id'))
+  chargeId!: string;
+
+  @Column(optionalIdColumn('person_id'))
+  personId!: string | null;
+
+  @Column(textColumn('title'))
+  title!: string;
+
+  @Column(textColumn('seen'))
+  seen!: string;
+
+  @Column(textColumn('check_first'))
+  checkFirst!: string;
+
+  @Column(instantColumn('raised_at'))
+  raisedAt!: number;
+
+  @Column(wholeColumn('late_by_s'))
+  lateByS!: number;
+
+  @Column(optionalIdColumn('taken_by_id'))
+  takenById!: string | null;
+
+  @Column(optionalInstantColumn('taken_at'))
+  takenAt!: number | null;
+
+  @Column(optionalInstantColumn('cleared_at'))
+  clearedAt!: number | null;
+}

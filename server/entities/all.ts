@@ -1,0 +1,50 @@
+/** All entities, listed: globs break in a bundle. */
+import { Alert } from './alert';
+import { Channel } from './channel';
+import { ChannelHold } from './channel-hold';
+import { Charge } from './charge';
+import { ChargeEvent } from './charge-event';
+import { ChargeReading } from './charge-reading';
+import { Charger } from './charger';
+import { CheckAnswer } from './check-answer';
+import { IdempotencyKey } from './idempotency-key';
+import { Invitation } from './invitation';
+import { LevellingResistor } from './levelling-resistor';
+import { LookIn } from './look-in';
+import { Meter } from './meter';
+import { ModuleType } from './module-type';
+import { Person } from './person';
+import { RestCheck } from './rest-check';
+import { RunStretch } from './run-stretch';
+import { Session } from './session';
+import { Spare } from './spare';
+import { SpareReading } from './spare-reading';
+import { Wall } from './wall';
+import { WallCode } from './wall-code';
+import { Workshop } from './workshop';
+
+export const entities = [
+  Workshop,
+  Person,
+  Session,
+  Invitation,
+  ModuleType,
+  Charger,
+  Channel,
+  LevellingResistor,
+  Meter,
+  Spare,
+  SpareReading,
+  Charge,
+  ChannelHold,
+  RunStretch,
+  ChargeReading,
+  CheckAnswer,
+  ChargeEvent,
+  RestCheck,
+  LookIn,
+  Alert,
+  Wall,
+  WallCode,
+  IdempotencyKey,
+];

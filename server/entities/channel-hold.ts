@@ -1,0 +1,33 @@
+import { Check, Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import { idColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+
+/** A channel held by a step of a charge. Two running steps on one channel cannot exist. */
+@Entity({ name: 'channel_hold' })
+@Index('ix_channel_hold_charge', ['workshopId', 'chargeId'])
+@Index('uq_channel_running', ['channelId'], { unique: true, where: "state = 'running'" })
+@Check('ck_channel_hold_state', "state IN ('reserved','running','released')")
+export class ChannelHold {
+  @PrimaryColumn(idColumn('id'))
+  id!: string;
+
+  @Column(idColumn('workshop_id'))
+  workshopId!: string;
+
+  @Column(idColumn('charge_id'))
+  chargeId!: string;
+
+  @Column(wholeColumn('step_index'))
+  stepIndex!: number;
+
+  @Column(idColumn('channel_id'))
+  channelId!: string;
+
+  @Column(textColumn('state'))
+  state!: 'reserved' | 'running' | 'released';
+
+  @Column(optionalInstantColumn('from_at'))
+  fromAt!: number | null;
+
+  @Column(optionalInstantColumn('to_at'))
+  toAt!: number | null;
+}

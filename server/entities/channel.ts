@@ -1,0 +1,59 @@
+import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { flagColumn, idColumn, optionalRealColumn, realColumn, textColumn } from './columns';
+
+/** One output of a charger. Its name is unique in the workshop, because people say only that. */
+@Entity({ name: 'channel' })
+@Unique('uq_channel_name', ['workshopId', 'name'])
+@Index('ix_channel_charger', ['workshopId', 'chargerId'])
+export class Channel {
+  @PrimaryColumn(idColumn('id'))
+  id!: string;
+
+  @Column(idColumn('workshop_id'))
+  workshopId!: string;
+
+  @Column(idColumn('charger_id'))
+  chargerId!: string;
+
+  @Column(textColumn('name'))
+  name!: string;
+
+  @Column(realColumn('max_amps'))
+  maxAmps!: number;
+
+  @Column(realColumn('min_amps'))
+  minAmps!: number;
+
+  @Column(realColumn('max_volts'))
+  maxVolts!: number;
+
+  @Column(optionalRealColumn('max_watts'))
+  maxWatts!: number | null;
+
+  @Column(flagColumn('adjustable_volts'))
+  adjustableVolts!: boolean;
+
+  @Column(textColumn('senses'))
+  senses!: 'own-terminals' | 'module';
+
+  @Column(realColumn('lead_milliohm'))
+  leadMilliohm!: number;
+
+  @Column(realColumn('display_step_millivolts'))
+  displayStepMillivolts!: number;
+
+  @Column(flagColumn('single_group'))
+  singleGroup!: boolean;
+
+  @Column(flagColumn('can_discharge'))
+  canDischarge!: boolean;
+
+  @Column(optionalRealColumn('discharge_amps'))
+  dischargeAmps!: number | null;
+
+  @Column(optionalRealColumn('load_ohm'))
+  loadOhm!: number | null;
+
+  @Column(flagColumn('retired'))
+  retired!: boolean;
+}

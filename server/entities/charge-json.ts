@@ -1,0 +1,33 @@
+/** Shapes of the JSON columns of a charge. */
+import type {
+  ChannelParameters,
+  ModuleParameters,
+  NeighbourState,
+  ResistorParameters,
+  SpareState,
+  TargetState,
+  WorkshopParameters,
+} from '@/calc/plan-types';
+import type { Reckoning } from '@/calc/live-types';
+
+/** The numbers a charge was planned with. Later changes of stock or equipment do not touch a charge that exists. */
+export interface FrozenInputs {
+  module: ModuleParameters;
+  spare: SpareState;
+  target: TargetState;
+  channels: ChannelParameters[];
+  resistors: ResistorParameters[];
+  neighbour: NeighbourState | null;
+  workshop: WorkshopParameters;
+  celsius: number;
+  seed: number;
+  lagLimitVolts: number;
+  /** When the spare's reading was taken, epoch ms. */
+  spareReadAt: number;
+}
+
+/** The last reckoning and the instant (epoch ms) it was made for. */
+export interface StoredReckoning {
+  at: number;
+  reckoning: Reckoning;
+}

@@ -1,0 +1,60 @@
+import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import {
+  idColumn,
+  instantColumn,
+  optionalIdColumn,
+  optionalJsonColumn,
+  optionalRealColumn,
+  optionalTextColumn,
+  textColumn,
+} from './columns';
+
+/** A reading taken while a charge runs or rests. A corrected one stays, with what replaced it. */
+@Entity({ name: 'charge_reading' })
+@Index('ix_charge_reading_charge', ['workshopId', 'chargeId', 'at'])
+export class ChargeReading {
+  @PrimaryColumn(idColumn('id'))
+  id!: string;
+
+  @Column(idColumn('workshop_id'))
+  workshopId!: string;
+
+  @Column(idColumn('charge_id'))
+  chargeId!: string;
+
+  @Column(instantColumn('at'))
+  at!: number;
+
+  @Column(optionalRealColumn('terminal_volts'))
+  terminalVolts!: number | null;
+
+  @Column(optionalRealColumn('amps'))
+  amps!: number | null;
+
+  @Column(optionalRealColumn('celsius'))
+  celsius!: number | null;
+
+  @Column(optionalJsonColumn('group_volts'))
+  groupVolts!: number[] | null;
+
+  @Column(optionalIdColumn('meter_id'))
+  meterId!: string | null;
+
+  @Column(idColumn('person_id'))
+  personId!: string;
+
+  @Column(textColumn('source'))
+  source!: 'typed';
+
+  @Column(optionalIdColumn('replaces_id'))
+  replacesId!: string | null;
+
+  @Column(optionalIdColumn('replaced_by_id'))
+  replacedById!: string | null;
+
+  @Column(optionalTextColumn('reason'))
+  reason!: string | null;
+
+  @Column(instantColumn('created_at'))
+  createdAt!: number;
+}

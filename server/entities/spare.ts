@@ -1,0 +1,67 @@
+import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import type { NumberSource } from '@/calc/plan-types';
+import type { SpareInput } from '@/shared/contract/spare';
+import {
+  idColumn,
+  instantColumn,
+  optionalIdColumn,
+  optionalInstantColumn,
+  optionalRealColumn,
+  optionalTextColumn,
+  textColumn,
+  wholeColumn,
+} from './columns';
+
+/** One physical replacement module in stock. */
+@Entity({ name: 'spare' })
+@Unique('uq_spare_label', ['workshopId', 'label'])
+@Index('ix_spare_type', ['workshopId', 'moduleTypeId'])
+export class Spare {
+  @PrimaryColumn(idColumn('id'))
+  id!: string;
+
+  @Column(idColumn('workshop_id'))
+  workshopId!: string;
+
+  @Column(textColumn('label'))
+  label!: string;
+
+  @Column(idColumn('module_type_id'))
+  moduleTypeId!: string;
+
+  @Column(optionalTextColumn('shelf_place'))
+  shelfPlace!: string | null;
+
+  @Column(optionalRealColumn('capacity_ah'))
+  capacityAh!: number | null;
+
+  @Column(optionalRealColumn('health_percent'))
+  healthPercent!: number | null;
+
+  @Column(textColumn('capacity_source'))
+  capacitySource!: NumberSource;
+
+  @Column(textColumn('condition'))
+  condition!: SpareInput['condition'];
+
+  @Column(optionalTextColumn('quarantine_reason'))
+  quarantineReason!: string | null;
+
+  @Column(optionalInstantColumn('quarantined_at'))
+  quarantinedAt!: number | null;
+
+  @Column(optionalIdColumn('quarantined_by_id'))
+  quarantinedById!: string | null;
+
+  @Column(optionalInstantColumn('fitted_at'))
+  fittedAt!: number | null;
+
+  @Column(optionalTextColumn('note'))
+  note!: string | null;
+
+  @Column(wholeColumn('rev'))
+  rev!: number;
+
+  @Column(instantColumn('created_at'))
+  createdAt!: number;
+}

@@ -1,0 +1,38 @@
+import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { idColumn, instantColumn, optionalInstantColumn, optionalRealColumn, textColumn } from './columns';
+
+/** A paired wall screen; its token reads the board and nothing else. */
+@Entity({ name: 'wall' })
+@Unique('uq_wall_token', ['tokenHash'])
+@Index('ix_wall_workshop', ['workshopId'])
+export class Wall {
+  @PrimaryColumn(idColumn('id'))
+  id!: string;
+
+  @Column(idColumn('workshop_id'))
+  workshopId!: string;
+
+  @Column(textColumn('name'))
+  name!: string;
+
+  @Column(textColumn('token_hash'))
+  tokenHash!: string;
+
+  @Column(optionalRealColumn('diagonal_inches'))
+  diagonalInches!: number | null;
+
+  @Column(optionalRealColumn('distance_metres'))
+  distanceMetres!: number | null;
+
+  @Column(idColumn('approved_by_id'))
+  approvedById!: string;
+
+  @Column(instantColumn('created_at'))
+  createdAt!: number;
+
+  @Column(optionalInstantColumn('last_heard_at'))
+  lastHeardAt!: number | null;
+
+  @Column(optionalInstantColumn('revoked_at'))
+  revokedAt!: number | null;
+}

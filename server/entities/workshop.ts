@@ -1,0 +1,46 @@
+import { Column, Entity, PrimaryColumn } from 'typeorm';
+import type { DayHours } from '@/shared/contract/workshop';
+import { idColumn, instantColumn, jsonColumn, realColumn, textColumn, wholeColumn } from './columns';
+
+/** A workshop: the tenant every other row belongs to, with its settings. */
+@Entity({ name: 'workshop' })
+export class Workshop {
+  @PrimaryColumn(idColumn('id'))
+  id!: string;
+
+  @Column(textColumn('name'))
+  name!: string;
+
+  @Column(textColumn('zone'))
+  zone!: string;
+
+  @Column(jsonColumn('working_hours'))
+  workingHours!: DayHours[];
+
+  @Column(realColumn('tolerance_millivolts'))
+  toleranceMillivolts!: number;
+
+  @Column(wholeColumn('min_rest_minutes'))
+  minRestMinutes!: number;
+
+  @Column(wholeColumn('look_in_minutes'))
+  lookInMinutes!: number;
+
+  @Column(realColumn('inrush_limit_c'))
+  inrushLimitC!: number;
+
+  @Column(realColumn('lag_limit_millivolts'))
+  lagLimitMillivolts!: number;
+
+  @Column(wholeColumn('board_rev'))
+  boardRev!: number;
+
+  @Column(wholeColumn('charge_count'))
+  chargeCount!: number;
+
+  @Column(wholeColumn('rev'))
+  rev!: number;
+
+  @Column(instantColumn('created_at'))
+  createdAt!: number;
+}

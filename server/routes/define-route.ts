@@ -1,0 +1,53 @@
+/**
+ * Declares a route with its policy. The policy is attached to the handler that express runs, so that a test can walk
+ * the running router and find every route's policy, or the lack of one.
+ */
+import type { Request, RequestHandler, Response, Router } from 'express';
+import type * as z from 'zod/mini';
+import type { Capability } from '@/shared/contract/roles';
+import type { Deps, Member } from '../deps';
+
+/** Who may: anybody; any member; a member with a capability; a paired wall. */
+export type Policy =
+  { kind: 'public' } | { kind: 'member' } | { kind: 'capability'; capability: Capability } | { kind: 'wall' };
+
+export type Method = 'get' | 'post' | 'patch' | 'put' | 'delete';
+
+export interface RouteInput<Body, Query> {
+  deps: Deps;
+  /** Null on public and wall routes. */
+  member: Member;
+  wall: { id: string; workshopId: string };
+  params: Record<string, string>;
+  body: Body;
+  query: Query;
+  /** Revision from If-Match; only where the route asks for it. */
+  rev: number;
+  now: number;
+  request: Request;
+  response: Response;
+}
+
+export interface RouteSpec<Body = undefined, Query = undefined> {
+  method: Method;
+  path: string;
+  policy: Policy;
+  body?: z.ZodMiniType<Body>;
+  query?: z.ZodMiniType<Query>;
+  /** The write carries an Idempotency-Key; the stored answer is given again for the same key. */
+  idempotent?: boolean;
+  /** The write carries If-Match with the row's revision. */
+  ifMatch?: boolean;
+  /** Status of a good answer; 200 by default, 204 where nothing is returned. */
+  status?: number;
+  handle: (input: RouteInput<Body, Query>) => Promise<unknown>;
+}
+
+export interface DeclaredHandler extends RequestHandler {
+  policy?: Policy;
+}
+
+export type RouteRegistrar = <Body = undefined, Query = undefined>(spec: RouteSpec<Body, Query>) => void;
+
+/** A resource's routes file exports one of these; create-app calls them all. */
+export type RoutesModule = (route: RouteRegistrar, router: Router) => void;
