@@ -38,6 +38,18 @@ export function onPath(program) {
     .some((folder) => folder && fs.existsSync(path.join(folder, program)));
 }
 
+/** The Chromium to test with: BIDEWELL_CHROMIUM, else Debian's or another one on the PATH; null when there is none. */
+export function chromiumPath() {
+  const named = process.env.BIDEWELL_CHROMIUM;
+  if (named) return fs.existsSync(named) ? named : null;
+  for (const program of ['chromium', 'chromium-browser', 'google-chrome-stable', 'google-chrome']) {
+    for (const folder of ['/usr/bin', ...(process.env.PATH ?? '').split(path.delimiter)]) {
+      if (folder && fs.existsSync(path.join(folder, program))) return path.join(folder, program);
+    }
+  }
+  return null;
+}
+
 /**
  * Runs a long-lived command, hands SIGINT and SIGTERM on to it and ends with its status. A terminal sends Ctrl-C to
  * the child as well; the server takes a second signal as 'now', so it is handed on only where the child has not had it.
