@@ -1,0 +1,11 @@
+// `npm run bench`: the figures the house promises, measured on this machine against the built server.
+import { buildWhatIsStale } from './build.mjs';
+import { ensureChromium, ensureInstalled } from './install.mjs';
+import { fromRoot, runOrExit } from './tools.mjs';
+
+ensureInstalled();
+const chromium = ensureChromium();
+await buildWhatIsStale();
+runOrExit(process.execPath, ['--import', 'tsx', fromRoot('tests/bench/index.ts'), ...process.argv.slice(2)], {
+  BIDEWELL_CHROMIUM: chromium ?? '',
+});
