@@ -114,6 +114,8 @@ export interface WorkshopParameters {
   busbarsS: number;
   /** Seconds from now at which nobody is there any more today; null: not known. */
   closesInS: number | null;
+  /** Current above which a caution is given, as a multiple of one group's capacity per hour; default 0.5. */
+  rateLimitC?: number;
 }
 
 export interface PlanInput {
@@ -133,6 +135,34 @@ export interface PlanInput {
   seed: number;
   /** Samples of the band; default 64. */
   samples?: number;
+  /** Standard deviations that stand in place of the defaults (calc/plan/default-spreads.ts). */
+  spreads?: Partial<Spreads>;
+}
+
+/** How far each number may be off: one standard deviation, unless said otherwise. */
+export interface Spreads {
+  /** Share of the capacity. */
+  capacityRelative: number;
+  /** Share of the resistance. */
+  resistanceRelative: number;
+  /** Share of the charger's current. */
+  currentRelative: number;
+  /** Offset of a meter, V: one per meter, so that it cancels where the same meter read both. */
+  meterVolts: number;
+  /** Scatter of a single group's reading, V. */
+  readingVolts: number;
+  /** Of the target beside its meter's offset, V. */
+  targetVolts: number;
+  /** Offset of the charger's own voltmeter per group, V: it decides where an on-the-mark charge ends. */
+  chargerVolts: number;
+  /** Offset of the whole open-circuit curve, V. */
+  curveVolts: number;
+  /** Half width of the hysteresis loop per group, V; taken as equally likely anywhere inside. */
+  hysteresisVolts: number;
+  /** Of the module's temperature, °C. */
+  temperatureCelsius: number;
+  /** Share of the self-discharge since the reading. */
+  selfDischargeRelative: number;
 }
 
 export interface Band {
@@ -182,6 +212,9 @@ export interface TracePlanPoint {
   clipVolts: number;
   /** Mean rest voltage of the groups, V. */
   restVolts: number;
+  /** Where it may be at that moment, 10 and 90 % of the samples, V. */
+  restLowVolts?: number;
+  restHighVolts?: number;
 }
 
 export type Doubt =
@@ -220,12 +253,18 @@ export interface PlanOption {
   channelText: string;
   amps: number;
   steps: PlannedStep[];
-  /** From clip-on (option's 0) to ready: hands, current, rest and check. */
+  /** From clip-on (option's 0) to ready: wait for the channel, hands, current, rest and check. */
   totalS: Band;
+  /** Wait until the channel is free, s; the first segment. */
+  queueS: number;
+  /** First current, s from the option's 0: the moment that a running charge counts as 0. */
+  currentStartS: number;
+  /** Last current of the nominal run, s from the option's 0. */
+  currentEndS: number;
   /** The likely run, for the ribbon; starts at 0. */
   segments: Segment[];
   trace: TracePlanPoint[];
-  /** Rest-voltage band for the picture: p10/p90 of the mean rest voltage at the trace's moments. */
+  /** Charge at the terminals over all steps, Ah: through the terminals counted once, group by group and paralleled over all groups. */
   ampHours: number;
   wattHours: number;
   handsOnS: number;
@@ -236,6 +275,8 @@ export interface PlanOption {
   endSpreadVolts: number;
   /** Rest voltage per group after the rest, V. */
   endGroupVolts: number[];
+  /** Every group ends within the tolerance; an option that does not is never marked soonest. */
+  withinTolerance: boolean;
   /** What the charger is set to in the bulk step, V; null for a resistor. */
   setVolts: number | null;
   /** The highest set voltage that keeps a forgotten charger safe, V over the module (bulk step). */
@@ -282,6 +323,8 @@ export interface ChargePlan {
   /** Sorted, soonest first. */
   options: PlanOption[];
   ruledOut: RuledOutWay[];
+  /** Every group is within the tolerance already: nothing to charge, `options` is empty. */
+  alreadyWithin: boolean;
   /** Not empty: this spare cannot be charged to this target here at all; `options` is empty then. */
   refusals: Refusal[];
   cautions: Caution[];
