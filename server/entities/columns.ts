@@ -23,7 +23,11 @@ const jsonTransformer: ValueTransformer = {
 export const jsonColumn = (name: string): ColumnOptions => ({ type: 'text', name, transformer: jsonTransformer });
 export const optionalJsonColumn = (name: string): ColumnOptions => ({ ...jsonColumn(name), nullable: true });
 
-export const idColumn = (name: string): ColumnOptions => ({ type: 'varchar', length: '36', name });
+export const idColumn = (name: string): ColumnOptions & { nullable?: false } => ({
+  type: 'varchar',
+  length: '36',
+  name,
+});
 export const optionalIdColumn = (name: string): ColumnOptions => ({ ...idColumn(name), nullable: true });
 export const textColumn = (name: string): ColumnOptions => ({ type: 'varchar', name });
 export const optionalTextColumn = (name: string): ColumnOptions => ({ type: 'varchar', name, nullable: true });
