@@ -1,6 +1,9 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import type { AlertKind } from '@/shared/contract/alert';
 import { idColumn, instantColumn, optionalIdColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+import { Charge } from './charge';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** One alert a cause; the cause key makes it so across restarts. */
 @Entity({ name: 'alert' })
@@ -10,6 +13,7 @@ export class Alert {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_alert_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
@@ -22,9 +26,11 @@ export class Alert {
   @Column(textColumn('level'))
   level!: 'tell' | 'amber' | 'alarm';
 
+  @ForeignKey(() => Charge, { name: 'fk_alert_charge', onDelete: 'CASCADE' })
   @Column(idColumn('charge_id'))
   chargeId!: string;
 
+  @ForeignKey(() => Person, { name: 'fk_alert_person' })
   @Column(optionalIdColumn('person_id'))
   personId!: string | null;
 
@@ -43,6 +49,7 @@ export class Alert {
   @Column(wholeColumn('late_by_s'))
   lateByS!: number;
 
+  @ForeignKey(() => Person, { name: 'fk_alert_taken_by' })
   @Column(optionalIdColumn('taken_by_id'))
   takenById!: string | null;
 

@@ -1,5 +1,8 @@
-import { Check, Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import { Check, Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import { idColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+import { Channel } from './channel';
+import { Charge } from './charge';
+import { Workshop } from './workshop';
 
 /** A channel held by a step of a charge. Two running steps on one channel cannot exist. */
 @Entity({ name: 'channel_hold' })
@@ -10,15 +13,18 @@ export class ChannelHold {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_channel_hold_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Charge, { name: 'fk_channel_hold_charge', onDelete: 'CASCADE' })
   @Column(idColumn('charge_id'))
   chargeId!: string;
 
   @Column(wholeColumn('step_index'))
   stepIndex!: number;
 
+  @ForeignKey(() => Channel, { name: 'fk_channel_hold_channel' })
   @Column(idColumn('channel_id'))
   channelId!: string;
 

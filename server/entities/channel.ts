@@ -1,5 +1,7 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import { flagColumn, idColumn, optionalRealColumn, realColumn, textColumn } from './columns';
+import { Charger } from './charger';
+import { Workshop } from './workshop';
 
 /** One output of a charger. Its name is unique in the workshop, because people say only that. */
 @Entity({ name: 'channel' })
@@ -9,9 +11,11 @@ export class Channel {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_channel_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Charger, { name: 'fk_channel_charger' })
   @Column(idColumn('charger_id'))
   chargerId!: string;
 

@@ -1,4 +1,4 @@
-import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import {
   idColumn,
   instantColumn,
@@ -8,6 +8,10 @@ import {
   optionalTextColumn,
   textColumn,
 } from './columns';
+import { Charge } from './charge';
+import { Meter } from './meter';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** A reading taken while a charge runs or rests. A corrected one stays, with what replaced it. */
 @Entity({ name: 'charge_reading' })
@@ -16,9 +20,11 @@ export class ChargeReading {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_charge_reading_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Charge, { name: 'fk_charge_reading_charge', onDelete: 'CASCADE' })
   @Column(idColumn('charge_id'))
   chargeId!: string;
 
@@ -37,9 +43,11 @@ export class ChargeReading {
   @Column(optionalJsonColumn('group_volts'))
   groupVolts!: number[] | null;
 
+  @ForeignKey(() => Meter, { name: 'fk_charge_reading_meter' })
   @Column(optionalIdColumn('meter_id'))
   meterId!: string | null;
 
+  @ForeignKey(() => Person, { name: 'fk_charge_reading_person' })
   @Column(idColumn('person_id'))
   personId!: string;
 

@@ -1,4 +1,4 @@
-import { Check, Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Check, Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import type { Direction } from '@/calc/types';
 import type { Finish, PlanOption, Way } from '@/calc/plan-types';
 import type { FrozenInputs, StoredReckoning } from './charge-json';
@@ -17,6 +17,11 @@ import {
   textColumn,
   wholeColumn,
 } from './columns';
+import { Meter } from './meter';
+import { ModuleType } from './module-type';
+import { Person } from './person';
+import { Spare } from './spare';
+import { Workshop } from './workshop';
 
 /** One spare being brought to one target. `option` is the way that was chosen, `frozen` the numbers it was planned with; stage and instants are the server's. */
 @Entity({ name: 'charge' })
@@ -36,6 +41,7 @@ export class Charge {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_charge_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
@@ -48,15 +54,19 @@ export class Charge {
   @Column(optionalTextColumn('module_position'))
   modulePosition!: string | null;
 
+  @ForeignKey(() => Spare, { name: 'fk_charge_spare' })
   @Column(idColumn('spare_id'))
   spareId!: string;
 
+  @ForeignKey(() => ModuleType, { name: 'fk_charge_module_type' })
   @Column(idColumn('module_type_id'))
   moduleTypeId!: string;
 
+  @ForeignKey(() => Person, { name: 'fk_charge_person' })
   @Column(optionalIdColumn('person_id'))
   personId!: string | null;
 
+  @ForeignKey(() => Person, { name: 'fk_charge_created_by' })
   @Column(idColumn('created_by_id'))
   createdById!: string;
 
@@ -81,6 +91,7 @@ export class Charge {
   @Column(realColumn('tolerance_volts'))
   toleranceVolts!: number;
 
+  @ForeignKey(() => Meter, { name: 'fk_charge_target_meter' })
   @Column(optionalIdColumn('target_meter_id'))
   targetMeterId!: string | null;
 
@@ -159,6 +170,7 @@ export class Charge {
   @Column(optionalTextColumn('stop_reason'))
   stopReason!: string | null;
 
+  @ForeignKey(() => Charge, { name: 'fk_charge_top_up_of' })
   @Column(optionalIdColumn('top_up_of'))
   topUpOf!: string | null;
 

@@ -1,4 +1,4 @@
-import { Column, Entity, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
 import {
   flagColumn,
   idColumn,
@@ -8,6 +8,8 @@ import {
   textColumn,
   wholeColumn,
 } from './columns';
+import { Meter } from './meter';
+import { Workshop } from './workshop';
 
 /** A charger; what can run is its channels. */
 @Entity({ name: 'charger' })
@@ -16,6 +18,7 @@ export class Charger {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_charger_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
@@ -25,6 +28,7 @@ export class Charger {
   @Column(optionalTextColumn('place'))
   place!: string | null;
 
+  @ForeignKey(() => Meter, { name: 'fk_charger_meter' })
   @Column(optionalIdColumn('meter_id'))
   meterId!: string | null;
 

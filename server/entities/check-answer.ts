@@ -1,6 +1,9 @@
-import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import type { CheckCode } from '@/shared/contract/charge';
 import { idColumn, instantColumn, optionalInstantColumn, optionalTextColumn, textColumn } from './columns';
+import { Charge } from './charge';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** An answer given before clipping on; an earlier one stays. */
 @Entity({ name: 'check_answer' })
@@ -10,9 +13,11 @@ export class CheckAnswer {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_check_answer_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Charge, { name: 'fk_check_answer_charge', onDelete: 'CASCADE' })
   @Column(idColumn('charge_id'))
   chargeId!: string;
 
@@ -25,6 +30,7 @@ export class CheckAnswer {
   @Column(optionalTextColumn('note'))
   note!: string | null;
 
+  @ForeignKey(() => Person, { name: 'fk_check_answer_person' })
   @Column(idColumn('person_id'))
   personId!: string;
 

@@ -1,5 +1,7 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import { idColumn, instantColumn, jsonColumn, textColumn, wholeColumn } from './columns';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** The stored answer of a write that must happen once. */
 @Entity({ name: 'idempotency_key' })
@@ -9,9 +11,11 @@ export class IdempotencyKey {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_idempotency_key_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Person, { name: 'fk_idempotency_key_person', onDelete: 'CASCADE' })
   @Column(idColumn('person_id'))
   personId!: string;
 

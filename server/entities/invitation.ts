@@ -1,6 +1,8 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import type { Role } from '@/shared/contract/roles';
 import { idColumn, instantColumn, optionalIdColumn, optionalInstantColumn, textColumn } from './columns';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** A one-use link to join, or to set a new password. */
 @Entity({ name: 'invitation' })
@@ -10,6 +12,7 @@ export class Invitation {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_invitation_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
@@ -22,12 +25,14 @@ export class Invitation {
   @Column(textColumn('role'))
   role!: Role;
 
+  @ForeignKey(() => Person, { name: 'fk_invitation_person' })
   @Column(optionalIdColumn('person_id'))
   personId!: string | null;
 
   @Column(textColumn('token_hash'))
   tokenHash!: string;
 
+  @ForeignKey(() => Person, { name: 'fk_invitation_invited_by' })
   @Column(idColumn('invited_by_id'))
   invitedById!: string;
 

@@ -1,5 +1,6 @@
-import { Column, Entity, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
 import { idColumn, realColumn, textColumn, wholeColumn } from './columns';
+import { Workshop } from './workshop';
 
 /** A resistor the workshop has for levelling groups or neighbours. */
 @Entity({ name: 'levelling_resistor' })
@@ -8,6 +9,7 @@ export class LevellingResistor {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_levelling_resistor_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 

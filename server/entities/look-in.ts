@@ -1,5 +1,8 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import { idColumn, instantColumn, optionalIdColumn, optionalInstantColumn, optionalTextColumn } from './columns';
+import { Charge } from './charge';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** A visit that a running charge asks for. */
 @Entity({ name: 'look_in' })
@@ -9,9 +12,11 @@ export class LookIn {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_look_in_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Charge, { name: 'fk_look_in_charge', onDelete: 'CASCADE' })
   @Column(idColumn('charge_id'))
   chargeId!: string;
 
@@ -21,6 +26,7 @@ export class LookIn {
   @Column(optionalInstantColumn('done_at'))
   doneAt!: number | null;
 
+  @ForeignKey(() => Person, { name: 'fk_look_in_person' })
   @Column(optionalIdColumn('person_id'))
   personId!: string | null;
 

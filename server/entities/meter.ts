@@ -1,5 +1,6 @@
-import { Column, Entity, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
 import { idColumn, optionalInstantColumn, realColumn, textColumn, wholeColumn } from './columns';
+import { Workshop } from './workshop';
 
 /** A meter that readings name, with what it was last found to be off by. */
 @Entity({ name: 'meter' })
@@ -8,6 +9,7 @@ export class Meter {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_meter_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 

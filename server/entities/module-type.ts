@@ -1,4 +1,4 @@
-import { Column, Entity, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
 import type { ChemistryId } from '@/calc/plan-types';
 import type { ResistanceKind } from '@/calc/plan-types';
 import {
@@ -10,6 +10,7 @@ import {
   textColumn,
   wholeColumn,
 } from './columns';
+import { Workshop } from './workshop';
 
 /** A type of module with its maker's limits. */
 @Entity({ name: 'module_type' })
@@ -18,6 +19,7 @@ export class ModuleType {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_module_type_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 

@@ -1,6 +1,7 @@
-import { Check, Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Check, Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import type { Role } from '@/shared/contract/roles';
 import { idColumn, instantColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+import { Workshop } from './workshop';
 
 /** Somebody who signs in. An address belongs to one person of one workshop. */
 @Entity({ name: 'person' })
@@ -11,6 +12,7 @@ export class Person {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_person_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 

@@ -1,5 +1,8 @@
-import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import { idColumn, instantColumn, optionalIdColumn, optionalInstantColumn, optionalTextColumn } from './columns';
+import { Charge } from './charge';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** A stretch in which current may flow; a hold ends one, a resume begins the next. */
 @Entity({ name: 'run_stretch' })
@@ -9,9 +12,11 @@ export class RunStretch {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_run_stretch_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Charge, { name: 'fk_run_stretch_charge', onDelete: 'CASCADE' })
   @Column(idColumn('charge_id'))
   chargeId!: string;
 
@@ -24,6 +29,7 @@ export class RunStretch {
   @Column(optionalTextColumn('reason'))
   reason!: string | null;
 
+  @ForeignKey(() => Person, { name: 'fk_run_stretch_person' })
   @Column(optionalIdColumn('person_id'))
   personId!: string | null;
 }

@@ -1,5 +1,7 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import { idColumn, instantColumn, optionalInstantColumn, optionalTextColumn, textColumn } from './columns';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** A signed-in device: hashes of the present and the previous refresh token, and the successor (sealed) given out in the grace time. */
 @Entity({ name: 'session' })
@@ -10,9 +12,11 @@ export class Session {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_session_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Person, { name: 'fk_session_person', onDelete: 'CASCADE' })
   @Column(idColumn('person_id'))
   personId!: string;
 

@@ -1,4 +1,4 @@
-import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import {
   idColumn,
   instantColumn,
@@ -7,6 +7,10 @@ import {
   optionalRealColumn,
   optionalTextColumn,
 } from './columns';
+import { Meter } from './meter';
+import { Person } from './person';
+import { Spare } from './spare';
+import { Workshop } from './workshop';
 
 /** Group voltages of a spare at rest. */
 @Entity({ name: 'spare_reading' })
@@ -15,9 +19,11 @@ export class SpareReading {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_spare_reading_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
+  @ForeignKey(() => Spare, { name: 'fk_spare_reading_spare' })
   @Column(idColumn('spare_id'))
   spareId!: string;
 
@@ -30,9 +36,11 @@ export class SpareReading {
   @Column(optionalRealColumn('celsius'))
   celsius!: number | null;
 
+  @ForeignKey(() => Meter, { name: 'fk_spare_reading_meter' })
   @Column(optionalIdColumn('meter_id'))
   meterId!: string | null;
 
+  @ForeignKey(() => Person, { name: 'fk_spare_reading_person' })
   @Column(idColumn('person_id'))
   personId!: string;
 

@@ -1,4 +1,4 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import type { NumberSource } from '@/calc/plan-types';
 import type { SpareInput } from '@/shared/contract/spare';
 import {
@@ -11,6 +11,9 @@ import {
   textColumn,
   wholeColumn,
 } from './columns';
+import { ModuleType } from './module-type';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** One physical replacement module in stock. */
 @Entity({ name: 'spare' })
@@ -20,12 +23,14 @@ export class Spare {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_spare_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
   @Column(textColumn('label'))
   label!: string;
 
+  @ForeignKey(() => ModuleType, { name: 'fk_spare_module_type' })
   @Column(idColumn('module_type_id'))
   moduleTypeId!: string;
 
@@ -50,6 +55,7 @@ export class Spare {
   @Column(optionalInstantColumn('quarantined_at'))
   quarantinedAt!: number | null;
 
+  @ForeignKey(() => Person, { name: 'fk_spare_quarantined_by' })
   @Column(optionalIdColumn('quarantined_by_id'))
   quarantinedById!: string | null;
 

@@ -1,5 +1,7 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import { idColumn, instantColumn, optionalIdColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+import { Wall } from './wall';
+import { Workshop } from './workshop';
 
 /** A pairing in progress (RFC 8628). Belongs to a workshop only from its approval on. */
 @Entity({ name: 'wall_code' })
@@ -30,9 +32,11 @@ export class WallCode {
   @Column(optionalInstantColumn('last_polled_at'))
   lastPolledAt!: number | null;
 
+  @ForeignKey(() => Workshop, { name: 'fk_wall_code_workshop' })
   @Column(optionalIdColumn('workshop_id'))
   workshopId!: string | null;
 
+  @ForeignKey(() => Wall, { name: 'fk_wall_code_wall' })
   @Column(optionalIdColumn('wall_id'))
   wallId!: string | null;
 

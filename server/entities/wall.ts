@@ -1,5 +1,7 @@
-import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
 import { idColumn, instantColumn, optionalInstantColumn, optionalRealColumn, textColumn } from './columns';
+import { Person } from './person';
+import { Workshop } from './workshop';
 
 /** A paired wall screen; its token reads the board and nothing else. */
 @Entity({ name: 'wall' })
@@ -9,6 +11,7 @@ export class Wall {
   @PrimaryColumn(idColumn('id'))
   id!: string;
 
+  @ForeignKey(() => Workshop, { name: 'fk_wall_workshop' })
   @Column(idColumn('workshop_id'))
   workshopId!: string;
 
@@ -24,6 +27,7 @@ export class Wall {
   @Column(optionalRealColumn('distance_metres'))
   distanceMetres!: number | null;
 
+  @ForeignKey(() => Person, { name: 'fk_wall_approved_by' })
   @Column(idColumn('approved_by_id'))
   approvedById!: string;
 
