@@ -62,6 +62,11 @@ export interface StepInput {
   settledVolts: number;
 }
 
+export interface StepOptions {
+  /** Also give the course of the step, `trace`. */
+  trace?: boolean;
+}
+
 export type StepOutcome = 'target' | 'cutoff' | 'group-limit' | 'time-cap' | 'unreachable';
 
 export interface TracePoint {
