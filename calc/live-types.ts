@@ -25,6 +25,12 @@ export interface LiveReading {
 export interface RunStretch {
   fromS: number;
   toS: number | null;
+  /**
+   * Step of the option (0-based, the first of those that run side by side) that this stretch belongs to. A step ends
+   * with its last stretch; the next one begins with its own first stretch and never by itself, because a hand swaps the
+   * clips. Left out: 0.
+   */
+  stepIndex?: number;
 }
 
 export interface ReckonInput {
@@ -55,7 +61,14 @@ export interface Reckoning {
   terminalVolts: number;
   deliveredAh: number;
   plannedAh: number;
+  /** Step that runs, or that ended last and waits for the swap to the next one. */
   stepIndex: number;
+  /**
+   * End of current of that step, reached or expected, s. Later than `nowS` while it runs; at or before `nowS` with
+   * another step to come: the charge waits for the swap, no current flows, and the next step is reckoned to begin at
+   * `nowS` plus its hands-on time.
+   */
+  stepEndS: number;
   /** Instants from clip-on, s. */
   taperAtS: number | null;
   currentEndS: number;

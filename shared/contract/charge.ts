@@ -60,6 +60,8 @@ export const holdSchema = z.object({ reason, at: atNow });
 export const resumeSchema = z.object({ at: atNow });
 export const stopSchema = z.object({ reason, at: atNow, quarantine: z.optional(z.boolean()) });
 export const currentOffSchema = z.object({ at: atNow });
+/** The clips were moved to the next step of the charge. */
+export const nextStepSchema = z.object({ at: atNow });
 export const handOverSchema = z.object({ personId: id });
 export const lookInSchema = z.object({ note: z.optional(optionalText('The note', 200)) });
 
@@ -99,6 +101,14 @@ export const shelveSchema = z.object({
   note: z.optional(optionalText('The note')),
 });
 export const topUpSchema = z.object({ targetVolts: z.optional(groupVolts) });
+
+/** Which charges to list: those on the bench, or those that are over, newest first. */
+export const chargesQuerySchema = z.object({
+  open: z.optional(z.enum(['1'])),
+  closed: z.optional(z.enum(['1'])),
+  page: z.optional(z.string().check(z.regex(/^[1-9]\d{0,5}$/, 'Pages are counted from 1.'))),
+});
+export type ChargesQuery = z.infer<typeof chargesQuerySchema>;
 
 export interface InstantBand {
   early: Instant;
@@ -173,9 +183,13 @@ export interface CheckItemDto {
   code: CheckCode;
   /** 'data': answered by the numbers and locked; 'ruled-out': the numbers forbid; 'person': to be answered. */
   by: 'person' | 'data' | 'ruled-out';
+  /** 'Temperature' */
   title: string;
+  /** The question to a person; where the numbers answer, what they say: '21 °C, allowed 10–45 °C'. */
   question: string;
+  /** What it is about, or where the answer comes from: 'Answered from the reading at 13:37. Locked.' */
   detail: string;
+  /** Words on the two answers; the given one stands behind the title afterwards. Empty where the numbers answer. */
   yes: string;
   no: string;
   answer: 'yes' | 'no' | null;
@@ -218,11 +232,30 @@ export interface RestCheckDto {
   verdict: CheckVerdict;
 }
 
+export interface ChargeLink {
+  id: string;
+  number: string;
+}
+
+/** One page of a list of charges. */
+export interface ChargeListDto {
+  charges: ChargeCardDto[];
+  page: number;
+  pageCount: number;
+  total: number;
+}
+
 export interface ChargeDto extends ChargeCardDto {
   option: PlanOption;
   moduleTypeId: string;
   shelfPlace: string | null;
+  /** Meter the pack was read with, and at which temperature: a top-up is planned with both again. */
   meterId: string | null;
+  targetCelsius: number | null;
+  /** The charge that this one went on from, and the one that went on from this. */
+  topUpOf: ChargeLink | null;
+  wentOnAs: ChargeLink | null;
+  stopReason: string | null;
   minRestS: number;
   deliveredAh: number;
   plannedAh: number;

@@ -54,5 +54,7 @@ export interface PlanDto {
 export const keepPlanSchema = z.object({
   ...planSchema.shape,
   optionId: z.string().check(z.minLength(1), z.maxLength(200)),
+  /** The charge that this one tops up: it is closed, its spare goes on in the new one. */
+  topUpOf: z.optional(z.nullable(id)),
 });
 export type KeepPlanRequest = z.infer<typeof keepPlanSchema>;
