@@ -237,14 +237,6 @@ export interface ChargeLink {
   number: string;
 }
 
-/** One page of a list of charges. */
-export interface ChargeListDto {
-  charges: ChargeCardDto[];
-  page: number;
-  pageCount: number;
-  total: number;
-}
-
 export interface ChargeDto extends ChargeCardDto {
   option: PlanOption;
   moduleTypeId: string;
