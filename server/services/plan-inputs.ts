@@ -1,0 +1,223 @@
+/**
+ * From the rows of a workshop to what the planner takes. Used for a plan that is only looked at and for one that is
+ * kept as a charge, so that both see the same numbers.
+ */
+import { createHash } from 'node:crypto';
+import type { EntityManager } from 'typeorm';
+import { planCharge } from '@/calc/index';
+import type { PlanInput, RuledOutWay } from '@/calc/plan-types';
+import type { PlanDto, PlanRequest } from '@/shared/contract/plan';
+import type { FrozenInputs } from '../entities/charge-json';
+import type { Meter } from '../entities/meter';
+import type { ModuleType } from '../entities/module-type';
+import type { Spare } from '../entities/spare';
+import type { SpareReading } from '../entities/spare-reading';
+import { conflict, invalid, notFound } from '../errors/domain-error';
+import { listUsableChannels } from '../repositories/chargers.repository';
+import { listMeters } from '../repositories/meters.repository';
+import { findModuleType } from '../repositories/module-types.repository';
+import { listOpenHolds } from '../repositories/open-holds.repository';
+import { listResistors } from '../repositories/resistors.repository';
+import { findLastSpareReading, findSpare } from '../repositories/spares.repository';
+import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
+import { channelHolders, chargeTitle } from './channel-availability';
+import { toInstant } from './instants';
+import { correctedVolt, meterOffsetSdVolts } from './meter-trust';
+import { neighbourFor } from './neighbour-for';
+import {
+  channelParameters,
+  moduleParameters,
+  resistorParameters,
+  spareState,
+  workshopParameters,
+} from './plan-parameters';
+import { closesInSeconds } from './working-hours';
+
+/** The shop's temperature where nobody has read the module's, °C. A guess. */
+const ROOM_CELSIUS = 20;
+
+export interface PlanInputs {
+  input: PlanInput;
+  /** What a charge keeps of it. */
+  frozen: FrozenInputs;
+  /** Names of the channels in the plan, and from when each is free, by id. */
+  channelNames: PlanDto['channels'];
+  /** Channels left out because nobody can say when they are free. */
+  blockedChannels: RuledOutWay[];
+  spare: Spare;
+  type: ModuleType;
+  reading: SpareReading;
+  clipOnAt: number;
+  readyBy: number | null;
+  toleranceMillivolts: number;
+}
+
+/**
+ * Gathers and checks what a plan needs.
+ *
+ * Meters' known offsets are taken off spare and target. A channel in use is offered from the likely end of its
+ * charge's current; channels of this spare's own charge count as free, as it is being planned again.
+ *
+ * @param now epoch ms; 0 s of the plan
+ * @throws DomainError 404 unknown spare, 409 the spare is fitted, 400 with the field at fault
+ */
+export async function buildPlanInputs(
+  manager: EntityManager,
+  workshopId: string,
+  request: PlanRequest,
+  now: number,
+): Promise<PlanInputs> {
+  const workshop = await workshopForPlans(manager, workshopId);
+  const { spare, type, reading } = await plannedSpare(manager, workshopId, request.spareId);
+  const meters = new Map((await listMeters(manager, workshopId)).map((meter) => [meter.id, meter]));
+  const packMeter = packMeterOf(request, meters);
+  const spareMeter = meters.get(reading.meterId ?? '') ?? null;
+  const clipOnAt = request.clipOnAt === null ? now : Math.max(now, Date.parse(request.clipOnAt));
+  const readyBy = request.readyBy === null ? null : Date.parse(request.readyBy);
+  if (readyBy !== null && readyBy <= now) throw invalid({ readyBy: 'This time has passed. Type a later one.' });
+
+  const spareNow = spareState(spare, type, reading, spareMeter, now);
+  const targetVolts = correctedVolt(request.targetVolts, packMeter);
+  const toleranceMillivolts = request.toleranceMillivolts ?? workshop.toleranceMillivolts;
+  const bench = await channelsFor(manager, workshopId, spare.id, meters, now);
+  const frozen: FrozenInputs = {
+    module: moduleParameters(type),
+    spare: spareNow,
+    target: {
+      volts: targetVolts,
+      toleranceVolts: toleranceMillivolts / 1000,
+      meterId: request.meterId,
+      celsius: request.packCelsius,
+      sdVolts: null,
+    },
+    channels: bench.channels,
+    resistors: (await listResistors(manager, workshopId)).map(resistorParameters),
+    neighbour: await neighbourFor(
+      manager,
+      workshopId,
+      { spare, type, spareVolts: spareNow.groupVolts, targetVolts },
+      meters,
+      now,
+    ),
+    workshop: workshopParameters(workshop, closesInSeconds(workshop, now, clipOnAt)),
+    celsius: spareNow.celsius ?? ROOM_CELSIUS,
+    seed: seedOf(spare.id, reading.id),
+    lagLimitVolts: workshop.lagLimitMillivolts / 1000,
+    spareReadAt: reading.at,
+  };
+  const meterVolts = meterOffsetSdVolts(
+    [packMeter, spareMeter].filter((meter) => meter !== null),
+    now,
+  );
+  return {
+    input: {
+      module: frozen.module,
+      spare: frozen.spare,
+      target: frozen.target,
+      channels: frozen.channels,
+      resistors: frozen.resistors,
+      neighbour: frozen.neighbour,
+      workshop: frozen.workshop,
+      celsius: frozen.celsius,
+      seed: frozen.seed,
+      readyByS: readyBy === null ? null : (readyBy - now) / 1000,
+      clipOnAtS: (clipOnAt - now) / 1000,
+      ...(meterVolts === undefined ? {} : { spreads: { meterVolts } }),
+    },
+    frozen,
+    channelNames: bench.names,
+    blockedChannels: bench.blocked,
+    spare,
+    type,
+    reading,
+    clipOnAt,
+    readyBy,
+    toleranceMillivolts,
+  };
+}
+
+/**
+ * Plans a spare: every way, finish and channel with its band. Nothing is stored.
+ * @throws DomainError as buildPlanInputs
+ */
+export async function planFor(
+  manager: EntityManager,
+  workshopId: string,
+  request: PlanRequest,
+  now: number,
+): Promise<PlanInputs & { dto: PlanDto }> {
+  const inputs = await buildPlanInputs(manager, workshopId, request, now);
+  const plan = planCharge(inputs.input);
+  return {
+    ...inputs,
+    dto: {
+      plan: { ...plan, ruledOut: [...plan.ruledOut, ...inputs.blockedChannels] },
+      plannedAt: toInstant(now),
+      clipOnAt: toInstant(inputs.clipOnAt),
+      toleranceMillivolts: inputs.toleranceMillivolts,
+      channels: inputs.channelNames,
+    },
+  };
+}
+
+async function plannedSpare(
+  manager: EntityManager,
+  workshopId: string,
+  spareId: string,
+): Promise<{ spare: Spare; type: ModuleType; reading: SpareReading }> {
+  const spare = await findSpare(manager, workshopId, spareId);
+  if (!spare) throw notFound('This spare');
+  if (spare.fittedAt !== null)
+    throw conflict('spare_fitted', `${spare.label} was fitted and is no longer in stock. Take another spare.`);
+  const type = await findModuleType(manager, workshopId, spare.moduleTypeId);
+  if (!type) throw notFound('The type of this spare');
+  const reading = await findLastSpareReading(manager, workshopId, spare.id);
+  if (!reading) throw invalid({ spareId: `${spare.label} has no reading. Read its groups first.` });
+  return { spare, type, reading };
+}
+
+function packMeterOf(request: PlanRequest, meters: ReadonlyMap<string, Meter>): Meter | null {
+  if (request.meterId === null) return null;
+  const meter = meters.get(request.meterId);
+  if (!meter) throw invalid({ meterId: 'This meter is not on the list. Choose another.' });
+  return meter;
+}
+
+async function channelsFor(
+  manager: EntityManager,
+  workshopId: string,
+  spareId: string,
+  meters: ReadonlyMap<string, Meter>,
+  now: number,
+): Promise<{ channels: FrozenInputs['channels']; names: PlanDto['channels']; blocked: RuledOutWay[] }> {
+  const holds = (await listOpenHolds(manager, workshopId)).filter(({ charge }) => charge.spareId !== spareId);
+  const holders = channelHolders(holds, now);
+  const channels: FrozenInputs['channels'] = [];
+  const names: PlanDto['channels'] = {};
+  const blocked: RuledOutWay[] = [];
+  for (const { channel, charger } of await listUsableChannels(manager, workshopId)) {
+    const holder = holders.get(channel.id);
+    if (holder?.freeAt === null) {
+      blocked.push({
+        way: 'terminals',
+        finish: 'over-and-settle',
+        channelId: channel.id,
+        channelName: channel.name,
+        reason: `${channel.name} is taken by ${chargeTitle(holder.charge)}, which is held. Resume or stop it to free the channel.`,
+      });
+      continue;
+    }
+    const freeAt = holder?.freeAt ?? now;
+    names[channel.id] = {
+      name: channel.name,
+      chargerName: charger.name,
+      freeAt: freeAt > now ? toInstant(freeAt) : null,
+    };
+    const meter = meters.get(charger.meterId ?? '') ?? null;
+    channels.push(channelParameters(channel, meter, (freeAt - now) / 1000, now));
+  }
+  return { channels, names, blocked };
+}
+
+/** The same spare with the same reading gives the same band to the last digit, whoever plans and when. */
+const seedOf = (...ids: string[]): number => createHash('sha256').update(ids.join('/')).digest().readUInt32BE(0);

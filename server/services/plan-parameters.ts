@@ -1,0 +1,110 @@
+/** Rows of the stock and the equipment as the planner takes them: SI units, and what is not typed as null. */
+import type {
+  ChannelParameters,
+  ModuleParameters,
+  ResistorParameters,
+  SpareState,
+  WorkshopParameters,
+} from '@/calc/plan-types';
+import type { Channel } from '../entities/channel';
+import type { LevellingResistor } from '../entities/levelling-resistor';
+import type { Meter } from '../entities/meter';
+import type { ModuleType } from '../entities/module-type';
+import type { Spare } from '../entities/spare';
+import type { SpareReading } from '../entities/spare-reading';
+import type { Workshop } from '../entities/workshop';
+import { chargerOffsetSdVolts, correctedVolts } from './meter-trust';
+import { usedCapacity } from './spare-capacity';
+
+/** Hands-on times, s. Guesses of the trade; a workshop's own come with its closed charges. */
+const CLIP_ON_S = 300;
+const CLIP_OFF_S = 300;
+const CHECK_S = 300;
+/** Busbars off, or on again. */
+const BUSBARS_S = 1200;
+
+/** A reading's temperature says how warm the module is for this long, s: it follows the room within half a day. A guess. */
+const TEMPERATURE_GOOD_S = 12 * 3600;
+
+export const moduleParameters = (type: ModuleType): ModuleParameters => ({
+  chemistry: type.chemistry,
+  groupsInSeries: type.groupsInSeries,
+  cellsInParallel: type.cellsInParallel,
+  ratedAh: type.ratedAh,
+  chargeLimitVolts: type.chargeLimitVolts,
+  dischargeLimitVolts: type.dischargeLimitVolts,
+  floorVolts: type.floorVolts,
+  maxChargeAmps: type.maxChargeAmps,
+  maxDischargeAmps: type.maxDischargeAmps,
+  minChargeCelsius: type.minChargeCelsius,
+  maxChargeCelsius: type.maxChargeCelsius,
+  resistanceOhm: type.resistanceMilliohm === null ? null : type.resistanceMilliohm / 1000,
+  resistanceKind: type.resistanceKind,
+  linkResistanceOhm: type.linkMilliohm / 1000,
+  curve: null,
+  selfDischargePerMonth: type.selfDischargePercentPerMonth === null ? null : type.selfDischargePercentPerMonth / 100,
+});
+
+export function spareState(
+  spare: Spare,
+  type: ModuleType,
+  reading: SpareReading,
+  meter: Meter | null,
+  now: number,
+): SpareState {
+  const { capacityAh, source } = usedCapacity(spare, type);
+  const readingAgeS = Math.max(0, (now - reading.at) / 1000);
+  return {
+    groupVolts: correctedVolts(reading.groupVolts, meter),
+    readingAgeS,
+    celsius: readingAgeS <= TEMPERATURE_GOOD_S ? reading.celsius : null,
+    meterId: reading.meterId,
+    capacityAh,
+    capacitySource: source,
+    capacityRelativeSd: null,
+    condition: spare.quarantinedAt === null ? spare.condition : 'quarantined',
+    quarantineReason: spare.quarantineReason,
+  };
+}
+
+export const channelParameters = (
+  channel: Channel,
+  meter: Meter | null,
+  freeInS: number,
+  now: number,
+): ChannelParameters => ({
+  channelId: channel.id,
+  name: channel.name,
+  maxAmps: channel.maxAmps,
+  minAmps: channel.minAmps,
+  maxVolts: channel.maxVolts,
+  maxWatts: channel.maxWatts,
+  adjustableVolts: channel.adjustableVolts,
+  senses: channel.senses,
+  leadResistanceOhm: channel.leadMilliohm / 1000,
+  displayStepVolts: channel.displayStepMillivolts / 1000,
+  singleGroup: channel.singleGroup,
+  canDischarge: channel.canDischarge,
+  dischargeAmps: channel.dischargeAmps,
+  loadOhm: channel.loadOhm,
+  freeInS,
+  offsetSdVolts: chargerOffsetSdVolts(meter, now),
+});
+
+export const resistorParameters = (resistor: LevellingResistor): ResistorParameters => ({
+  resistorId: resistor.id,
+  name: resistor.name,
+  ohm: resistor.ohm,
+  maxWatts: resistor.maxWatts,
+});
+
+export const workshopParameters = (workshop: Workshop, closesInS: number): WorkshopParameters => ({
+  minRestS: workshop.minRestMinutes * 60,
+  lookInIntervalS: workshop.lookInMinutes * 60,
+  inrushLimitC: workshop.inrushLimitC,
+  clipOnS: CLIP_ON_S,
+  clipOffS: CLIP_OFF_S,
+  checkS: CHECK_S,
+  busbarsS: BUSBARS_S,
+  closesInS,
+});

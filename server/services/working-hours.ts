@@ -1,0 +1,33 @@
+import { DateTime } from 'luxon';
+import type { DayHours } from '@/shared/contract/workshop';
+
+/** Opening and closing (epoch ms) of the day in which `at` lies in the workshop's zone; null: closed that day. */
+export function openingOf(
+  workshop: { zone: string; workingHours: DayHours[] },
+  at: number,
+): { from: number; to: number } | null {
+  const day = DateTime.fromMillis(at, { zone: workshop.zone });
+  const hours = workshop.workingHours[day.weekday - 1];
+  if (!hours) return null;
+  return { from: instantOf(day, hours.from), to: instantOf(day, hours.to) };
+}
+
+/**
+ * Seconds from `now` after which nobody is there any more on the day of the clip-on.
+ * A clip-on outside the hours has nobody from its first moment.
+ */
+export function closesInSeconds(
+  workshop: { zone: string; workingHours: DayHours[] },
+  now: number,
+  clipOnAt: number,
+): number {
+  const opening = openingOf(workshop, clipOnAt);
+  const inside = opening !== null && clipOnAt >= opening.from && clipOnAt < opening.to;
+  return Math.max(0, ((inside ? opening.to : clipOnAt) - now) / 1000);
+}
+
+/** 'HH:MM' of a day as an instant; a time that the clock jumps over moves to the next that exists. */
+function instantOf(day: DateTime, time: string): number {
+  const [hour, minute] = time.split(':').map(Number);
+  return day.set({ hour, minute, second: 0, millisecond: 0 }).toMillis();
+}
