@@ -1,0 +1,74 @@
+import { StyleSheet, View } from 'react-native';
+import { dayName } from '../format/clock';
+import { addDays } from '../format/zone';
+import { Select } from './select';
+import { TimeField } from './time-field';
+
+/** A day ('2026-06-09') and a time of day as typed. `instantOfDay` and `parseTimeOfDay` make an instant of it. */
+export interface DayAndTime {
+  day: string;
+  time: string;
+}
+
+/** The days offered around today, in words. */
+export function dayOptions(today: string, from: number, to: number): { value: string; label: string }[] {
+  return Array.from({ length: to - from + 1 }, (_, i) => {
+    const day = addDays(today, from + i);
+    return { value: day, label: dayName(day, today) };
+  });
+}
+
+/** An instant in the workshop's zone: the day from a list, the time typed or picked. */
+export function DateTimeField({
+  label,
+  dayLabel = 'Day',
+  value,
+  onChange,
+  onBlur,
+  today,
+  from = 0,
+  to = 14,
+  error,
+  hint,
+}: {
+  label: string;
+  dayLabel?: string;
+  value: DayAndTime;
+  onChange: (value: DayAndTime) => void;
+  onBlur?: () => void;
+  /** Today in the workshop's zone, 'YYYY-MM-DD' (`dayOf`). */
+  today: string;
+  /** First and last day offered, counted from today; negative for the past. */
+  from?: number;
+  to?: number;
+  error?: string;
+  hint?: string;
+}) {
+  return (
+    <View style={styles.row}>
+      <View style={styles.half}>
+        <TimeField
+          label={label}
+          value={value.time}
+          error={error}
+          hint={hint}
+          onChangeText={(time) => onChange({ ...value, time })}
+          onBlur={onBlur}
+        />
+      </View>
+      <View style={styles.half}>
+        <Select
+          label={dayLabel}
+          value={value.day}
+          options={dayOptions(today, from, to)}
+          onChange={(day) => onChange({ ...value, day })}
+        />
+      </View>
+    </View>
+  );
+}
+
+const styles = StyleSheet.create({
+  row: { flexDirection: 'row', columnGap: 12 },
+  half: { flex: 1, minWidth: 0 },
+});

@@ -1,0 +1,9 @@
+import type { ReactElement, ReactNode } from 'react';
+// The one place that asks the web renderer for an element React Native has no primitive for.
+import createElement from 'react-native-web/dist/exports/createElement';
+
+/** A DOM element with React Native styles and accessibility props. Web only; for controls the browser does best. */
+export const domElement = (
+  tag: 'select' | 'option' | 'input' | 'a',
+  props: Record<string, unknown> & { children?: ReactNode; key?: string },
+): ReactElement => createElement(tag, props);

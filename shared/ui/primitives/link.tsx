@@ -1,0 +1,62 @@
+import { Pressable, StyleSheet, type StyleProp, type ViewStyle } from 'react-native';
+import { touch } from '../theme/tokens';
+import { web } from '../theme/web-props';
+import { Txt, type TextTone } from './txt';
+
+/**
+ * An underlined word: a small action or a way to another screen. The target is 48 px high; in a row that is lower
+ * give `tight`, which lets the target hang out over the row instead of growing it.
+ */
+export function Link({
+  title,
+  onPress,
+  href,
+  kind = 'body',
+  tone = 'ink',
+  label,
+  tight = false,
+  disabled = false,
+  style,
+}: {
+  title: string;
+  onPress?: () => void;
+  /** A real address: opens in a new tab, can be copied. `onPress`, where given, goes first. */
+  href?: string;
+  kind?: 'body' | 'small' | 'label';
+  tone?: TextTone;
+  /** 'Edit Petra Aldwin' where the word alone would be one of many. */
+  label?: string;
+  tight?: boolean;
+  disabled?: boolean;
+  style?: StyleProp<ViewStyle>;
+}) {
+  const address = href
+    ? {
+        href,
+        onClick: (event: { preventDefault(): void; metaKey?: boolean; ctrlKey?: boolean; shiftKey?: boolean }) => {
+          if (!onPress || event.metaKey || event.ctrlKey || event.shiftKey) return;
+          event.preventDefault();
+          onPress();
+        },
+      }
+    : null;
+  return (
+    <Pressable
+      role={href ? 'link' : 'button'}
+      aria-label={label}
+      aria-disabled={disabled || undefined}
+      onPress={disabled || href ? undefined : onPress}
+      {...web(address ?? {})}
+      style={[styles.target, tight && styles.tight, style]}
+    >
+      <Txt kind={kind} tone={disabled ? 'ink3' : tone} nowrap {...web({ dataSet: { underline: '' } })}>
+        {title}
+      </Txt>
+    </Pressable>
+  );
+}
+
+const styles = StyleSheet.create({
+  target: { minHeight: touch.min, minWidth: touch.min, justifyContent: 'center' },
+  tight: { marginVertical: -14 },
+});
