@@ -22,6 +22,11 @@ const wholeMathjs = {
   message: "Pulls 200 KiB into the page. Import the few functions by name from 'mathjs/number', in a part loaded late.",
 };
 
+const wholeZod = {
+  regex: '^zod($|/(?!mini$))',
+  message: "Pulls all of zod into the page. Import 'zod/mini'; the web build keeps only what is used of it.",
+};
+
 // no-restricted-syntax does not merge between blocks, so each floor lists its own set out of these.
 const noDefaultExport = {
   selector: 'ExportDefaultDeclaration',
@@ -152,8 +157,8 @@ export default defineConfig([
     rules: {
       ...imports(
         {
-          regex: '^(?!\\.{1,2}/|@/|zod($|/))',
-          message: 'shared/contract imports zod and types of calc, nothing else.',
+          regex: '^(?!\\.{1,2}/|@/|zod/mini$)',
+          message: 'shared/contract imports zod/mini and types of calc, nothing else.',
         },
         {
           regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?(client|ui)(/|$)`,
@@ -186,6 +191,7 @@ export default defineConfig([
       ...imports(
         serverOnly,
         wholeMathjs,
+        wholeZod,
         {
           regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?client(/|$)`,
           message:
@@ -207,6 +213,7 @@ export default defineConfig([
       ...imports(
         serverOnly,
         wholeMathjs,
+        wholeZod,
         {
           regex: own('server', 'tests'),
           message:

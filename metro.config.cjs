@@ -2,6 +2,8 @@ const { getDefaultConfig } = require('expo/metro-config');
 const { createHash } = require('node:crypto');
 const fs = require('node:fs');
 const path = require('node:path');
+const { leanZod } = require('./server/cli/web/lean-zod.cjs');
+const { splitChunks } = require('./server/cli/web/split-chunks.cjs');
 
 const config = getDefaultConfig(__dirname);
 
@@ -17,16 +19,17 @@ const root = __dirname.replace(/[/\\^$.*+?()[\]{}|]/g, '\\$&');
 const ours = new RegExp(`^${root}/(tests|server|data|dist[^/]*|\\.tsbuild|\\.git)/.*`);
 config.resolver.blockList = [config.resolver.blockList ?? [], ours].flat();
 
-// zod re-exports every language of its messages (about 65 KiB gzip) from one barrel. Ours are English sentences of
-// our own, so the barrel is replaced by its English file; `z.locales` is not used anywhere.
-const resolveFurther = config.resolver.resolveRequest;
-config.resolver.resolveRequest = (context, moduleName, platform) => {
-  const resolve = resolveFurther ?? context.resolveRequest;
-  const found = resolve(context, moduleName, platform);
-  if (found.type === 'sourceFile' && /[/\\]zod[/\\]v4[/\\]locales[/\\]index\.c?js$/.test(found.filePath)) {
-    return { ...found, filePath: found.filePath.replace(/index(\.c?js)$/, 'en$1') };
-  }
-  return found;
-};
+// The first load carries what its screen shows and no more. In development the packages are taken as they are.
+splitChunks();
+config.transformer.asyncRequireModulePath = path.join(__dirname, 'shared/client/async-require.ts');
+if (process.env.NODE_ENV === 'production') {
+  const lean = leanZod(__dirname);
+  const resolveFurther = config.resolver.resolveRequest;
+  config.resolver.resolveRequest = (context, moduleName, platform) => {
+    const filePath = lean.get(moduleName);
+    if (filePath) return { type: 'sourceFile', filePath };
+    return (resolveFurther ?? context.resolveRequest)(context, moduleName, platform);
+  };
+}
 
 module.exports = config;
