@@ -1,0 +1,11 @@
+/** A notice outside the page. One per `tag`: a later one replaces the earlier. */
+export interface Notice {
+  title: string;
+  body: string;
+  /** Address within this site that a tap opens. */
+  url: string;
+  tag: string;
+}
+
+/** 'default': not asked yet. 'unavailable': this device or address has none. */
+export type NoticePermission = 'granted' | 'denied' | 'default' | 'unavailable';

@@ -1,0 +1,26 @@
+/** First words of every query key, in one place: the socket's rules and the hooks must mean the same. */
+export const roots = {
+  session: 'session',
+  sessions: 'sessions',
+  frontDoor: 'front-door',
+  link: 'link',
+  people: 'people',
+  invitations: 'invitations',
+  workshop: 'workshop',
+  moduleTypes: 'module-types',
+  chargers: 'chargers',
+  resistors: 'resistors',
+  meters: 'meters',
+  spares: 'spares',
+  spare: 'spare',
+  estimate: 'estimate',
+  charges: 'charges',
+  charge: 'charge',
+  board: 'board',
+  alerts: 'alerts',
+  walls: 'walls',
+  wallRequest: 'wall-request',
+  wallMe: 'wall-me',
+  waits: 'waits',
+} as const;
+export type Root = (typeof roots)[keyof typeof roots];

@@ -1,0 +1,24 @@
+/** What survives a reload of a session that the script cannot read itself (its cookies are httpOnly). */
+import { externalStore } from './external-store';
+import { recall, remember } from './storage';
+
+export type EndedReason = 'expired' | 'disabled' | 'sign-out' | 'role-changed' | 'revoked';
+
+/** Why the last session ended; null while one is on, and after signing out here. */
+export const endedStore = externalStore<EndedReason | null>(null);
+
+/** Somebody has signed in in this browser and not signed out since. */
+export const signedInBefore = (): boolean => recall('signed-in') === '1';
+export const rememberSignedIn = (yes: boolean): void => remember('signed-in', yes ? '1' : null);
+
+/** Where a person was when the session ended, to go on there after signing in; within this site only. */
+export const returnTo = {
+  keep: (path: string): void => {
+    if (path.startsWith('/') && !path.startsWith('//')) remember('return-to', path, 'session');
+  },
+  take: (): string | null => {
+    const path = recall('return-to', 'session');
+    remember('return-to', null, 'session');
+    return path;
+  },
+};

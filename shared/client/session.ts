@@ -1,0 +1,136 @@
+import { queryOptions, useQuery, type QueryClient } from '@tanstack/react-query';
+import type { Capability, Role } from '@/shared/contract/roles';
+import type {
+  ActiveSessionDto,
+  CreateWorkshopInput,
+  LinkDto,
+  SessionDto,
+  SignInInput,
+} from '@/shared/contract/session';
+import { api, orNull } from './api';
+import { isProblem } from './api-problem';
+import { forgetDrafts } from './draft-store';
+import { queryClient } from './query-client';
+import { roots } from './query-keys';
+import { endedStore, signedInBefore, rememberSignedIn } from './session-state';
+import { staleTimes } from './stale-times';
+import { useWrite } from './use-write';
+
+/** Who is signed in; null: nobody. A browser that never signed in is not asked about, so no call fails for nothing. */
+export const sessionQuery = () =>
+  queryOptions({
+    queryKey: [roots.session],
+    queryFn: async ({ signal }) => {
+      if (!signedInBefore()) return null;
+      const session = await orNull(api.get<SessionDto>('/session', { signal }), [401]);
+      if (!session) rememberSignedIn(false);
+      return session;
+    },
+    staleTime: staleTimes.session,
+    gcTime: Infinity,
+  });
+
+export const useSession = () => useQuery(sessionQuery());
+
+/** The session where one is sure to be there: inside the guarded screens. Throws elsewhere. */
+export function useMember(): SessionDto {
+  const { data } = useSession();
+  if (!data) throw new Error('useMember outside the guarded screens');
+  return data;
+}
+
+/** Whether the person signed in may. The server checks again. */
+export function useCan(capability: Capability): boolean {
+  return useSession().data?.capabilities.includes(capability) ?? false;
+}
+
+function begin(client: QueryClient, session: SessionDto): void {
+  const last = client.getQueryData(sessionQuery().queryKey);
+  rememberSignedIn(true);
+  endedStore.set(null);
+  // Another person, or another workshop: nothing of the last one is shown for a moment.
+  if (last?.person.id !== session.person.id || last.workshop.id !== session.workshop.id)
+    client.removeQueries({ predicate: (query) => query.queryKey[0] !== roots.session });
+  client.setQueryData(sessionQuery().queryKey, session);
+}
+
+export const useSignIn = () =>
+  useWrite({
+    send: (input: SignInInput) => api.post<SessionDto>('/session', input, { open: true }),
+    store: begin,
+  });
+
+export const useDemoSignIn = () =>
+  useWrite({
+    send: (role: Role) => api.post<SessionDto>('/demo/sign-in', { role }, { open: true }),
+    store: begin,
+  });
+
+export const useCreateWorkshop = () =>
+  useWrite({
+    send: (input: CreateWorkshopInput) => api.post<SessionDto>('/workshops', input, { open: true }),
+    store: begin,
+  });
+
+/** What a one-use link is for. 404 and 410 say that it was used, has lapsed, or was never one. */
+export const useLink = (token: string) =>
+  useQuery({
+    queryKey: [roots.link, token],
+    queryFn: ({ signal }) => api.get<LinkDto>(`/links/${encodeURIComponent(token)}`, { open: true, signal }),
+    enabled: token !== '',
+    retry: (failures, error) => !isProblem(error) && failures < 2,
+  });
+
+export const useJoin = () =>
+  useWrite({
+    send: (input: { token: string; name: string; password: string }) =>
+      api.post<SessionDto>('/join', input, { open: true }),
+    store: begin,
+  });
+
+export const useResetPassword = () =>
+  useWrite({
+    send: (input: { token: string; password: string }) => api.post<SessionDto>('/reset', input, { open: true }),
+    store: begin,
+  });
+
+/** Forgets what this browser holds of the person; the shell goes to the sign-in screen. */
+function end(client: QueryClient): void {
+  const person = client.getQueryData(sessionQuery().queryKey)?.person;
+  if (person) forgetDrafts(person.id);
+  rememberSignedIn(false);
+  endedStore.set(null);
+  client.setQueryData(sessionQuery().queryKey, null);
+  client.removeQueries({ predicate: (query) => query.queryKey[0] !== roots.session });
+}
+
+export const useSignOut = () =>
+  useWrite({ send: () => orNull(api.delete('/session'), [401]), store: (client) => end(client) });
+
+/** Ends every session of the person, on all devices. */
+export const useSignOutEverywhere = () =>
+  useWrite({ send: () => orNull(api.delete('/sessions'), [401]), store: (client) => end(client) });
+
+/** Where the person is signed in. */
+export const useSessions = () =>
+  useQuery({
+    queryKey: [roots.sessions],
+    queryFn: ({ signal }) => api.get<ActiveSessionDto[]>('/sessions', { signal }),
+    staleTime: staleTimes.running,
+  });
+
+export const useChangeMe = () =>
+  useWrite({
+    send: (input: { name?: string; currentPassword?: string; password?: string }) => api.patch<void>('/me', input),
+    changes: [roots.session, roots.people, roots.sessions],
+  });
+
+/** The session has ended without anybody's doing here: nothing typed is lost, the shell asks to sign in again. */
+export function sessionLost(reason: 'expired' | 'disabled' | 'sign-out' | 'role-changed' | 'revoked'): void {
+  if (!queryClient.getQueryData(sessionQuery().queryKey)) return;
+  rememberSignedIn(false);
+  endedStore.set(reason);
+  queryClient.setQueryData(sessionQuery().queryKey, null);
+}
+
+api.on({ heard: () => {}, unheard: () => {}, sessionEnded: () => sessionLost('expired') });

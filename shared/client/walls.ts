@@ -1,0 +1,36 @@
+import { useQuery } from '@tanstack/react-query';
+import type { ApproveWallInput, WallDto, WallRequestDto } from '@/shared/contract/wall';
+import { api } from './api';
+import { isPassing } from './api-problem';
+import { roots } from './query-keys';
+import { staleTimes } from './stale-times';
+import { useWrite } from './use-write';
+
+/** Paired walls. */
+export const useWalls = () =>
+  useQuery({
+    queryKey: [roots.walls],
+    queryFn: ({ signal }) => api.get<WallDto[]>('/walls', { signal }),
+    staleTime: staleTimes.running,
+  });
+
+/** The screen that shows this code; waits until the code is whole. 404: no screen shows it. */
+export const useWallRequest = (userCode: string | null) =>
+  useQuery({
+    queryKey: [roots.wallRequest, userCode],
+    queryFn: ({ signal }) =>
+      api.get<WallRequestDto>(`/wall/requests/${encodeURIComponent(userCode ?? '')}`, { signal }),
+    enabled: userCode !== null,
+    staleTime: 10_000,
+    retry: (failures, error) => failures < 2 && isPassing(error),
+  });
+
+export const useApproveWall = () =>
+  useWrite({
+    send: (input: ApproveWallInput) => api.post<WallDto>('/wall/approvals', input),
+    changes: [roots.walls, roots.wallRequest],
+  });
+
+/** Takes a wall's right to read back; its screen shows a code again. */
+export const useRevokeWall = () =>
+  useWrite({ send: (id: string) => api.delete(`/walls/${id}`), changes: [roots.walls] });
