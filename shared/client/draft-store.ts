@@ -13,7 +13,7 @@ interface StoredDraft<T> {
 const keyOf = (personId: string | null, form: string) => `draft.${personId ?? 'nobody'}.${form}`;
 
 /** The draft, or null. */
-export function readDraft<T>(personId: string | null, form: string, now: number): T | null {
+export function readDraft<T>(personId: string | null, form: string, now: number = Date.now()): T | null {
   const stored = recallJson<StoredDraft<T> | null>(keyOf(personId, form), null);
   if (!stored) return null;
   if (now - stored.at <= lifetimeMs) return stored.value;
@@ -22,7 +22,7 @@ export function readDraft<T>(personId: string | null, form: string, now: number)
 }
 
 /** Keeps the draft; null drops it. */
-export const writeDraft = <T>(personId: string | null, form: string, value: T | null, now: number): void =>
+export const writeDraft = <T>(personId: string | null, form: string, value: T | null, now: number = Date.now()): void =>
   rememberJson(keyOf(personId, form), value === null ? null : ({ at: now, value } satisfies StoredDraft<T>));
 
 /** Drops every draft of a person who signs out here. */

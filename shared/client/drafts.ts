@@ -21,7 +21,7 @@ export function useDraft<T>(form: string, initial: T): Draft<T> {
   const personId = useSession().data?.person.id ?? null;
   const place = `${personId ?? ''} ${form}`;
   const read = (): { place: string; value: T; restored: boolean } => {
-    const kept = readDraft<T>(personId, form, Date.now());
+    const kept = readDraft<T>(personId, form);
     return { place, value: kept ?? initial, restored: kept !== null };
   };
   const [held, setHeld] = useState(read);
@@ -33,13 +33,13 @@ export function useDraft<T>(form: string, initial: T): Draft<T> {
     (next: T | ((last: T) => T)) =>
       setHeld((last) => {
         const value = next instanceof Function ? next(last.value) : next;
-        writeDraft(personId, form, value, Date.now());
+        writeDraft(personId, form, value);
         return { ...last, value };
       }),
     [personId, form],
   );
   const clear = useCallback(() => {
-    writeDraft(personId, form, null, Date.now());
+    writeDraft(personId, form, null);
     setHeld({ place, value: initial, restored: false });
   }, [personId, form, place, initial]);
   return { value: now.value, set, clear, restored: now.restored };

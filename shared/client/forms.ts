@@ -68,7 +68,7 @@ export function useContractForm<Values extends FieldValues, Output>({
   send,
 }: ContractFormOptions<Values, Output>): ContractForm<Values> {
   const personId = useSession().data?.person.id ?? null;
-  const [kept] = useState(() => (draft ? readDraft<Partial<Values>>(personId, draft, Date.now()) : null));
+  const [kept] = useState(() => (draft ? readDraft<Partial<Values>>(personId, draft) : null));
   const [error, setError] = useState<unknown>(null);
   const [problem, setProblem] = useState<string | null>(null);
   const [busy, setBusy] = useState(false);
@@ -88,7 +88,7 @@ export function useContractForm<Values extends FieldValues, Output>({
       formState: { values: true },
       callback: ({ values }) => {
         const open = Object.entries(values).filter(([name]) => !secrets.split(' ').includes(name));
-        writeDraft(personId, draft, Object.fromEntries(open), Date.now());
+        writeDraft(personId, draft, Object.fromEntries(open));
       },
     });
   }, [form, draft, personId, secrets]);
@@ -110,7 +110,7 @@ export function useContractForm<Values extends FieldValues, Output>({
     setProblem(null);
     try {
       await send(output as unknown as Output);
-      if (draft) writeDraft(personId, draft, null, Date.now());
+      if (draft) writeDraft(personId, draft, null);
     } catch (cause) {
       refuse(cause);
     } finally {
@@ -130,7 +130,7 @@ export function useContractForm<Values extends FieldValues, Output>({
       form.reset(next);
       setError(null);
       setProblem(null);
-      if (draft) writeDraft(personId, draft, null, Date.now());
+      if (draft) writeDraft(personId, draft, null);
     },
   };
 }
