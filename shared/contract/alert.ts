@@ -15,6 +15,8 @@ export interface AlertDto {
   seen: string;
   checkFirst: string;
   raisedAt: Instant;
+  /** How long after its cause it was told, s: the server was off in between. */
+  lateByS: number;
   takenBy: PersonRef | null;
   takenAt: Instant | null;
   /** The cause is gone. */
