@@ -6,10 +6,6 @@ export interface ChannelHolder {
   freeAt: number | null;
 }
 
-/** How a charge is called: its repair where there is one, else its number. */
-export const chargeTitle = (charge: { repairRef: string | null; number: string }): string =>
-  charge.repairRef ?? charge.number;
-
 /**
  * Who holds each channel, and until when: by the channel's id, channels that nobody holds left out.
  *

@@ -20,7 +20,8 @@ import { listOpenHolds } from '../repositories/open-holds.repository';
 import { listResistors } from '../repositories/resistors.repository';
 import { findLastSpareReading, findSpare } from '../repositories/spares.repository';
 import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
-import { channelHolders, chargeTitle } from './channel-availability';
+import { channelHolders } from './channel-availability';
+import { titleOf } from './charge-words';
 import { toInstant } from './instants';
 import { correctedVolt, meterOffsetSdVolts } from './meter-trust';
 import { neighbourFor } from './neighbour-for';
@@ -203,7 +204,7 @@ async function channelsFor(
         finish: 'over-and-settle',
         channelId: channel.id,
         channelName: channel.name,
-        reason: `${channel.name} is taken by ${chargeTitle(holder.charge)}, which is held. Resume or stop it to free the channel.`,
+        reason: `${channel.name} is taken by ${titleOf(holder.charge)}, which is held. Resume or stop it to free the channel.`,
       });
       continue;
     }

@@ -1,6 +1,7 @@
 import * as z from 'zod/mini';
 import { id, instant, optionalText, reason, text, type Instant, type PersonRef } from './common';
-import { groupVoltsList, optionalQuantity } from './quantity';
+import { groupVoltsProblems, typedGroupVolts, type TypeWindow } from './group-volts';
+import { optionalQuantity } from './quantity';
 
 export const conditions = ['sound', 'swollen', 'leaking', 'dented', 'water', 'deep-discharged'] as const;
 export const conditionNames: Record<(typeof conditions)[number], string> = {
@@ -14,13 +15,25 @@ export const conditionNames: Record<(typeof conditions)[number], string> = {
 export const numberSources = ['measured', 'label', 'guessed'] as const;
 
 export const spareReadingSchema = z.object({
-  groupVolts: groupVoltsList,
+  groupVolts: typedGroupVolts,
   celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 90 }),
   meterId: z.nullable(id),
   at: z.optional(instant),
   note: z.optional(optionalText('The note')),
 });
 export type SpareReadingInput = z.infer<typeof spareReadingSchema>;
+
+/** The same for a form that knows the type: the number of groups and each voltage are judged as the server will. */
+export const spareReadingSchemaFor = (type: TypeWindow) =>
+  spareReadingSchema.check((context) => {
+    for (const [path, message] of Object.entries(groupVoltsProblems(context.value.groupVolts, type, 'groupVolts')))
+      context.issues.push({
+        code: 'custom',
+        message,
+        input: context.value.groupVolts,
+        path: path.split('.').map((part) => (/^\d+$/.test(part) ? Number(part) : part)),
+      });
+  });
 
 export const spareSchema = z.object({
   label: text('The label', 30),
@@ -75,3 +88,12 @@ export interface SpareHistoryDto {
   readings: SpareReadingDto[];
   charges: { id: string; title: string; stage: string; at: Instant; targetVolts: number }[];
 }
+
+export const spareWheres = ['shelf', 'charge', 'quarantine', 'fitted'] as const satisfies readonly SpareWhere[];
+/** Which spares to list; without `where` all but the fitted ones. */
+export const sparesQuerySchema = z.object({
+  q: z.optional(z.string().check(z.maxLength(60, 'This is too long to look for.'))),
+  where: z.optional(z.enum(spareWheres)),
+  moduleTypeId: z.optional(id),
+});
+export type SparesQuery = z.infer<typeof sparesQuerySchema>;

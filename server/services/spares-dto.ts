@@ -1,0 +1,71 @@
+import { CAPACITY_RELATIVE_SD } from '@/calc/plan/default-spreads';
+import type { PersonRef } from '@/shared/contract/common';
+import type { SpareDto, SpareReadingDto, SpareWhere } from '@/shared/contract/spare';
+import type { ModuleType } from '../entities/module-type';
+import type { Spare } from '../entities/spare';
+import type { SpareReading } from '../entities/spare-reading';
+import type { SpareCharge } from '../repositories/spares.repository';
+import { titleOf } from './charge-words';
+import { toInstant } from './instants';
+import { usedCapacity } from './spare-capacity';
+
+export type People = ReadonlyMap<string, PersonRef>;
+
+const personRef = (people: People, id: string): PersonRef => people.get(id) ?? { id, name: 'Somebody' };
+
+/** Where a spare is: quarantine goes before all, then what was fitted, then its charge. */
+export function whereIs(spare: Spare, charge: SpareCharge | undefined): SpareWhere {
+  if (spare.quarantinedAt !== null) return 'quarantine';
+  if (spare.fittedAt !== null) return 'fitted';
+  return charge ? 'charge' : 'shelf';
+}
+
+export const spareReadingDto = (reading: SpareReading, people: People): SpareReadingDto => ({
+  id: reading.id,
+  at: toInstant(reading.at),
+  groupVolts: reading.groupVolts,
+  celsius: reading.celsius,
+  meterId: reading.meterId,
+  by: personRef(people, reading.personId),
+  note: reading.note,
+});
+
+export function spareDto(
+  spare: Spare,
+  type: ModuleType,
+  around: { reading: SpareReading | undefined; charge: SpareCharge | undefined; people: People },
+): SpareDto {
+  const { reading, charge, people } = around;
+  const { capacityAh, source } = usedCapacity(spare, type);
+  return {
+    id: spare.id,
+    label: spare.label,
+    moduleTypeId: spare.moduleTypeId,
+    shelfPlace: spare.shelfPlace,
+    capacityAh: spare.capacityAh,
+    healthPercent: spare.healthPercent,
+    capacitySource: spare.capacitySource,
+    condition: spare.condition,
+    note: spare.note,
+    typeName: type.name,
+    groupsInSeries: type.groupsInSeries,
+    chargeLimitVolts: type.chargeLimitVolts,
+    dischargeLimitVolts: type.dischargeLimitVolts,
+    floorVolts: type.floorVolts,
+    shelfVolts: type.shelfVolts,
+    where: whereIs(spare, charge),
+    usedCapacityAh: capacityAh,
+    capacitySdAh: capacityAh * CAPACITY_RELATIVE_SD[source],
+    quarantine:
+      spare.quarantinedAt === null
+        ? null
+        : {
+            reason: spare.quarantineReason ?? '',
+            at: toInstant(spare.quarantinedAt),
+            by: personRef(people, spare.quarantinedById ?? ''),
+          },
+    charge: charge ? { id: charge.id, title: titleOf(charge), stage: charge.stage } : null,
+    reading: reading ? spareReadingDto(reading, people) : null,
+    rev: spare.rev,
+  };
+}
