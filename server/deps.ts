@@ -3,8 +3,12 @@ import type { DataSource } from 'typeorm';
 import type { Role } from '@/shared/contract/roles';
 import type { Clock } from './clock';
 import type { Config } from './config';
+import type { Lifecycle } from './lifecycle';
 import type { LiveHub } from './live/hub';
 import type { Sleeper } from './live/sleeper';
+import type { Limits } from './services/limits';
+import type { Passwords } from './services/passwords';
+import type { Secrets } from './services/secrets';
 
 /** What every service gets. Made once in create-app. */
 export interface Deps {
@@ -14,6 +18,13 @@ export interface Deps {
   log: Logger;
   hub: LiveHub;
   sleeper: Sleeper;
+  lifecycle: Lifecycle;
+  /** Hashes and compares off the event loop. */
+  passwords: Passwords;
+  /** Keys of this installation. */
+  secrets: Secrets;
+  /** Throttles, kept in memory. */
+  limits: Limits;
 }
 
 /** Who asks, from the session; never from the request's body. */

@@ -6,6 +6,7 @@ import type { Request, RequestHandler, Response, Router } from 'express';
 import type * as z from 'zod/mini';
 import type { Capability } from '@/shared/contract/roles';
 import type { Deps, Member } from '../deps';
+import type { AddressLimit } from '../services/limits';
 
 /** Who may: anybody; any member; a member with a capability; a paired wall. */
 export type Policy =
@@ -40,11 +41,15 @@ export interface RouteSpec<Body = undefined, Query = undefined> {
   ifMatch?: boolean;
   /** Status of a good answer; 200 by default, 204 where nothing is returned. */
   status?: number;
+  /** Throttle of the asking address; 429 beyond it. */
+  limit?: AddressLimit;
   handle: (input: RouteInput<Body, Query>) => Promise<unknown>;
 }
 
 export interface DeclaredHandler extends RequestHandler {
   policy?: Policy;
+  /** What the route asks of a write, for the tests that walk the router. */
+  asks?: { ifMatch: boolean; idempotent: boolean; body: boolean; limit: AddressLimit | null };
 }
 
 export type RouteRegistrar = <Body = undefined, Query = undefined>(spec: RouteSpec<Body, Query>) => void;

@@ -1,0 +1,34 @@
+import express, { type Express } from 'express';
+import type { Deps } from './deps';
+import { notHere, problems } from './middleware/problems';
+import { requestLog } from './middleware/request-log';
+import { sameOrigin } from './middleware/same-origin';
+import { routesModules } from './routes/all';
+import { makeRegistrar } from './routes/register-route';
+
+/** The HTTP application: API, health, and the web app's files. Opens no port and no database. */
+export function createApp(deps: Deps): Express {
+  const { config } = deps;
+  const app = express();
+  app.disable('x-powered-by');
+  // Only as many forwarded headers are believed as proxies stand in front; none by default.
+  app.set('trust proxy', config.proxyHops);
+  app.set('query parser', 'simple');
+  app.use(requestLog(deps.log));
+
+  app.use('/api', (_request, response, next) => {
+    response.set('Cache-Control', 'no-store');
+    next();
+  });
+  app.use(sameOrigin(config.publicUrl));
+  app.use('/api', express.json({ limit: '256kb', strict: false }));
+
+  const router = express.Router();
+  const route = makeRegistrar(router, deps);
+  for (const addRoutes of routesModules) addRoutes(route, router);
+  app.use(router);
+  app.use('/api', notHere);
+  app.use(notHere);
+  app.use(problems(deps.log));
+  return app;
+}

@@ -1,0 +1,71 @@
+import { IsNull, MoreThan, type EntityManager } from 'typeorm';
+import { Person } from '../entities/person';
+import { Session } from '../entities/session';
+
+/** A session that is not ended, with its person; null where there is none. Says nothing of time or of a disabled person. */
+export async function findSessionWithPerson(
+  manager: EntityManager,
+  workshopId: string,
+  sessionId: string,
+): Promise<{ session: Session; person: Person } | null> {
+  const session = await manager.findOneBy(Session, { workshopId, id: sessionId, endedAt: IsNull() });
+  if (!session) return null;
+  const person = await manager.findOneBy(Person, { workshopId, id: session.personId });
+  return person ? { session, person } : null;
+}
+
+/** A session by its id alone, ended or not: the refresh token says no workshop. */
+export const findSessionById = (manager: EntityManager, sessionId: string): Promise<Session | null> =>
+  manager.findOneBy(Session, { id: sessionId });
+
+export const insertSession = async (manager: EntityManager, session: Session): Promise<void> => {
+  await manager.insert(Session, session);
+};
+
+export const updateSession = async (
+  manager: EntityManager,
+  workshopId: string,
+  sessionId: string,
+  change: Partial<Session>,
+): Promise<void> => {
+  await manager.update(Session, { workshopId, id: sessionId }, change);
+};
+
+/** Open sessions of a person, latest used first. */
+export const listOpenSessions = (
+  manager: EntityManager,
+  workshopId: string,
+  personId: string,
+  now: number,
+  usedAfter: number,
+): Promise<Session[]> =>
+  manager.find(Session, {
+    where: { workshopId, personId, endedAt: IsNull(), expiresAt: MoreThan(now), lastUsedAt: MoreThan(usedAfter) },
+    order: { lastUsedAt: 'DESC' },
+    take: 100,
+  });
+
+/** Ends every open session of a person; gives their ids. */
+export async function endSessionsOf(
+  manager: EntityManager,
+  workshopId: string,
+  personId: string,
+  now: number,
+  reason: string,
+): Promise<string[]> {
+  const open = await manager.find(Session, {
+    select: { id: true },
+    where: { workshopId, personId, endedAt: IsNull() },
+  });
+  await manager.update(
+    Session,
+    { workshopId, personId, endedAt: IsNull() },
+    { endedAt: now, endReason: reason, successor: null },
+  );
+  return open.map((session) => session.id);
+}
+
+/** Sessions that ended or ran out before `before` are of no use to anybody. */
+export const deleteOldSessions = async (manager: EntityManager, before: number): Promise<void> => {
+  await manager.createQueryBuilder().delete().from(Session).where('expires_at < :before', { before }).execute();
+};

@@ -1,0 +1,26 @@
+import { IsNull, type EntityManager } from 'typeorm';
+import { Wall } from '../entities/wall';
+
+/** A wall by the hash of its token alone: the token says no workshop, the row does. */
+export const findWallByTokenHash = (manager: EntityManager, tokenHash: string): Promise<Wall | null> =>
+  manager.findOneBy(Wall, { tokenHash });
+
+export const findWall = (manager: EntityManager, workshopId: string, id: string): Promise<Wall | null> =>
+  manager.findOneBy(Wall, { workshopId, id });
+
+/** Walls that are not revoked, oldest first. */
+export const listWalls = (manager: EntityManager, workshopId: string): Promise<Wall[]> =>
+  manager.find(Wall, { where: { workshopId, revokedAt: IsNull() }, order: { createdAt: 'ASC', id: 'ASC' } });
+
+export const insertWall = async (manager: EntityManager, wall: Wall): Promise<void> => {
+  await manager.insert(Wall, wall);
+};
+
+export const updateWall = async (
+  manager: EntityManager,
+  workshopId: string,
+  id: string,
+  change: Partial<Wall>,
+): Promise<void> => {
+  await manager.update(Wall, { workshopId, id }, change);
+};

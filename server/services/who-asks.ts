@@ -1,0 +1,48 @@
+import type { Deps, Member } from '../deps';
+import type { Person } from '../entities/person';
+import type { Session } from '../entities/session';
+import { findSessionWithPerson } from '../repositories/sessions.repository';
+import { findWallByTokenHash } from '../repositories/walls.repository';
+import { readAccessToken } from './access-token';
+import { sessionIdleMs } from './session-limits';
+import { hashToken } from './tokens';
+
+export const memberFrom = (person: Person, sessionId: string): Member => ({
+  workshopId: person.workshopId,
+  personId: person.id,
+  sessionId,
+  name: person.name,
+  role: person.role,
+});
+
+/** Whether a session still holds at `now`; its person's state is a question of its own. */
+export const sessionHolds = (session: Session, now: number): boolean =>
+  session.endedAt === null && now < session.expiresAt && now - session.lastUsedAt < sessionIdleMs;
+
+/**
+ * The member an access token stands for, as the database has them now: a role that was changed, a person who was
+ * disabled or a session that was ended counts from the very next request.
+ * @returns null for nobody; `accessUntil` is epoch ms
+ */
+export async function memberOf(
+  deps: Deps,
+  accessToken: string | undefined,
+  now: number,
+): Promise<{ member: Member; accessUntil: number } | null> {
+  const claims = accessToken ? readAccessToken(deps.secrets, accessToken, now) : null;
+  if (!claims) return null;
+  const found = await findSessionWithPerson(deps.dataSource.manager, claims.workshopId, claims.sessionId);
+  if (!found || found.person.id !== claims.personId) return null;
+  if (!sessionHolds(found.session, now) || found.person.disabledAt !== null) return null;
+  return { member: memberFrom(found.person, claims.sessionId), accessUntil: claims.expiresAt };
+}
+
+/** The wall a wall token stands for; null for none or a revoked one. */
+export async function wallOf(
+  deps: Deps,
+  wallToken: string | undefined,
+): Promise<{ id: string; workshopId: string } | null> {
+  if (!wallToken) return null;
+  const wall = await findWallByTokenHash(deps.dataSource.manager, hashToken(wallToken));
+  return wall && wall.revokedAt === null ? { id: wall.id, workshopId: wall.workshopId } : null;
+}

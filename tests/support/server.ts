@@ -1,0 +1,252 @@
+/**
+ * The server of the tests: the real application over an in-memory database that the migrations made, a clock moved by
+ * hand, and a hub that records what it is told. Two workshops, each with a person of every role.
+ */
+import type { Express } from 'express';
+import { createHash } from 'node:crypto';
+import request, { type Test } from 'supertest';
+import { makeLog } from '@/server/middleware/request-log';
+import { createApp } from '@/server/create-app';
+import { makeDataSource } from '@/server/data-source';
+import type { Deps } from '@/server/deps';
+import type { Config } from '@/server/config';
+import { Person } from '@/server/entities/person';
+import { Session } from '@/server/entities/session';
+import { Workshop } from '@/server/entities/workshop';
+import type { LiveEvent, LiveHub } from '@/server/live/hub';
+import { signAccessToken } from '@/server/services/access-token';
+import { makeLimits, type LimitName, type LimitRule } from '@/server/services/limits';
+import type { Passwords } from '@/server/services/passwords';
+import { secretsFrom } from '@/server/services/secrets';
+import { defaultSettings } from '@/server/services/workshop-defaults';
+import { roles, type Role } from '@/shared/contract/roles';
+
+/** Tuesday 9 June 2026, 10:00 in Berlin. */
+export const testNow = Date.parse('2026-06-09T08:00:00.000Z');
+
+export interface TestClock {
+  now(): number;
+  /** Moves on by so many milliseconds (back with a negative number). */
+  advance(ms: number): void;
+  set(ms: number): void;
+}
+
+export function makeTestClock(now = testNow): TestClock {
+  let at = now;
+  return {
+    now: () => at,
+    advance: (ms) => void (at += ms),
+    set: (ms) => void (at = ms),
+  };
+}
+
+export interface Announcement {
+  workshopId?: string;
+  personId?: string;
+  event: LiveEvent | 'end';
+  payload: unknown;
+}
+
+export interface RecordingHub extends LiveHub {
+  told: Announcement[];
+  /** The payloads of one event, oldest first. */
+  of(event: LiveEvent | 'end'): unknown[];
+}
+
+export function makeRecordingHub(): RecordingHub {
+  const told: Announcement[] = [];
+  return {
+    told,
+    of: (event) => told.filter((entry) => entry.event === event).map((entry) => entry.payload),
+    toWorkshop: (workshopId, event, payload) => void told.push({ workshopId, event, payload }),
+    toPerson: (workshopId, personId, event, payload) => void told.push({ workshopId, personId, event, payload }),
+    end: (target, reason) => void told.push({ event: 'end', payload: { ...target, reason } }),
+  };
+}
+
+export interface CountingPasswords extends Passwords {
+  hashed: number;
+  compared: number;
+}
+
+/** Stands in for bcrypt where hashing is not the subject; counts its calls. */
+export function makeCountingPasswords(): CountingPasswords {
+  const quick = (password: string) => `quick$${createHash('sha256').update(password).digest('hex')}`;
+  const passwords: CountingPasswords = {
+    hashed: 0,
+    compared: 0,
+    hash: async (password) => {
+      passwords.hashed += 1;
+      return quick(password);
+    },
+    matches: async (password, hash) => {
+      passwords.compared += 1;
+      return hash !== null && quick(password) === hash;
+    },
+    close: async () => {},
+  };
+  return passwords;
+}
+
+export interface TestWorkshop {
+  id: string;
+  people: Record<Role, { id: string; name: string; email: string; sessionId: string; password: string }>;
+}
+
+/** Sends requests signed in as one person; its access token is always fresh by the test's clock. */
+export interface TestAgent {
+  get(path: string): Test;
+  post(path: string, body?: object): Test;
+  patch(path: string, body?: object): Test;
+  delete(path: string): Test;
+  cookie(): string;
+}
+
+export interface TestServerOptions {
+  demo?: boolean;
+  now?: number;
+  config?: Partial<Config>;
+  limits?: Partial<Record<LimitName, LimitRule>>;
+  /** More of the dependencies replaced: a sleeper, a hub. */
+  deps?: Partial<Deps>;
+  /** Without the two workshops: an installation nobody has used. */
+  empty?: boolean;
+}
+
+export interface TestServer {
+  app: Express;
+  deps: Deps;
+  clock: TestClock;
+  hub: RecordingHub;
+  passwords: CountingPasswords;
+  own: TestWorkshop;
+  other: TestWorkshop;
+  /** A member's agent: by role in the own workshop, or in the other one. */
+  agentFor(role: Role, workshop?: TestWorkshop): TestAgent;
+  /** Nobody's agent. */
+  anyone: TestAgent;
+  close(): Promise<void>;
+}
+
+export const testPassword = 'quiet harbour lantern 7';
+
+const testConfig: Config = {
+  port: 0,
+  host: '127.0.0.1',
+  dataDir: '/nonexistent',
+  webDir: '/nonexistent',
+  demo: false,
+  tls: null,
+  proxyHops: 0,
+  publicUrl: null,
+  logLevel: 'silent',
+  metroPort: null,
+};
+
+async function addWorkshop(deps: Deps, name: 'own' | 'other', now: number): Promise<TestWorkshop> {
+  const id = `workshop-${name}`;
+  await deps.dataSource.manager.insert(Workshop, {
+    ...defaultSettings(`The ${name} workshop`, 'Europe/Berlin'),
+    id,
+    boardRev: 1,
+    chargeCount: 0,
+    rev: 1,
+    createdAt: now,
+  });
+  const people = {} as TestWorkshop['people'];
+  for (const role of roles) {
+    const person = {
+      id: `${name}-${role}`,
+      name: `${role[0]?.toUpperCase()}${role.slice(1)} of ${name}`,
+      email: `${role}@${name}.example.com`,
+      sessionId: `session-${name}-${role}`,
+      password: testPassword,
+    };
+    people[role] = person;
+    await deps.dataSource.manager.insert(Person, {
+      id: person.id,
+      workshopId: id,
+      name: person.name,
+      email: person.email,
+      passwordHash: await deps.passwords.hash(testPassword),
+      role,
+      disabledAt: null,
+      lastSeenAt: null,
+      rev: 1,
+      createdAt: now,
+    });
+    await deps.dataSource.manager.insert(Session, {
+      id: person.sessionId,
+      workshopId: id,
+      personId: person.id,
+      tokenHash: `never-${person.sessionId}`,
+      previousTokenHash: null,
+      successor: null,
+      rotatedAt: null,
+      device: 'Test',
+      createdAt: now,
+      // Far ahead, so that a test may move its clock by weeks.
+      lastUsedAt: now + 1e12,
+      expiresAt: now + 1e12,
+      endedAt: null,
+      endReason: null,
+    });
+  }
+  return { id, people };
+}
+
+const withCookie = (test: Test, cookie: string): Test => (cookie ? test.set('Cookie', cookie) : test);
+
+export const makeAgent = (app: Express, cookie: () => string): TestAgent => ({
+  get: (path) => withCookie(request(app).get(path), cookie()),
+  post: (path, body) => withCookie(request(app).post(path), cookie()).send(body ?? {}),
+  patch: (path, body) => withCookie(request(app).patch(path), cookie()).send(body ?? {}),
+  delete: (path) => withCookie(request(app).delete(path), cookie()),
+  cookie,
+});
+
+/** A running application for one test file or one test. Close it afterwards. */
+export async function makeTestServer(options: TestServerOptions = {}): Promise<TestServer> {
+  const clock = makeTestClock(options.now);
+  const hub = makeRecordingHub();
+  const passwords = makeCountingPasswords();
+  const dataSource = await makeDataSource(':memory:').initialize();
+  await dataSource.runMigrations();
+  const config: Config = { ...testConfig, demo: options.demo ?? false, ...options.config };
+  const deps: Deps = {
+    dataSource,
+    clock,
+    config,
+    log: makeLog('silent'),
+    hub,
+    sleeper: { poke: () => {} },
+    lifecycle: { ready: true },
+    passwords,
+    secrets: secretsFrom(Buffer.alloc(32, 7)),
+    limits: makeLimits(options.limits),
+    ...options.deps,
+  };
+  const none = { id: '', people: {} as TestWorkshop['people'] };
+  const own = options.empty ? none : await addWorkshop(deps, 'own', clock.now());
+  const other = options.empty ? none : await addWorkshop(deps, 'other', clock.now());
+  const app = createApp(deps);
+  return {
+    app,
+    deps,
+    clock,
+    hub,
+    passwords,
+    own,
+    other,
+    agentFor: (role, workshop = own) =>
+      makeAgent(app, () => {
+        const { id: personId, sessionId } = workshop.people[role];
+        const token = signAccessToken(deps.secrets, { personId, workshopId: workshop.id, sessionId }, clock.now());
+        return `bidewell_access=${token}`;
+      }),
+    anyone: makeAgent(app, () => ''),
+    close: async () => {
+      await dataSource.destroy();
+    },
+  };
+}
