@@ -41,12 +41,12 @@ export async function countTypeUse(manager: EntityManager, workshopId: string): 
       .groupBy('row.moduleTypeId')
       .getRawMany<{ typeId: string; count: number | string }>();
   const uses = new Map<string, TypeUse>();
-  const useOf = (typeId: string): TypeUse => {
+  const countsOf = (typeId: string): TypeUse => {
     const known = uses.get(typeId) ?? { spares: 0, charges: 0 };
     uses.set(typeId, known);
     return known;
   };
-  for (const row of await count(Spare)) useOf(row.typeId).spares = Number(row.count);
-  for (const row of await count(Charge)) useOf(row.typeId).charges = Number(row.count);
+  for (const row of await count(Spare)) countsOf(row.typeId).spares = Number(row.count);
+  for (const row of await count(Charge)) countsOf(row.typeId).charges = Number(row.count);
   return uses;
 }
