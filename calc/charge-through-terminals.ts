@@ -1,5 +1,5 @@
 import { compileCurve } from './curve/compiled-curve';
-import { coulombsToEmf, coulombsToGroupVolts } from './step/reach';
+import { isGiven } from './require';
 import { Laws } from './step/laws';
 import { Run } from './step/run';
 import { runLoop, type RunOutcome } from './step/run-loop';
@@ -30,10 +30,17 @@ export function chargeThroughTerminals(input: StepInput, options?: StepOptions):
   const efficiency = direction === 'charge' ? input.coulombicEfficiency : 1;
   const loop = new SeriesLoop([{ groups, curve, sense, side: 1, efficiency }]);
   const moduleOhm = loop.totalOhmic + input.linkResistanceOhm;
-  const decays = loop.uneven && (source.heldGroupVolts !== null || stop.groupVolts !== null);
+  const decays = loop.uneven && (isGiven(source.heldGroupVolts) || isGiven(stop.groupVolts));
   const laws = new Laws(
     loop,
-    { ...source, heldVolts: source.heldGroupVolts, totalOhm: moduleOhm + source.leadResistanceOhm },
+    {
+      maxAmps: source.maxAmps ?? null,
+      maxWatts: source.maxWatts ?? null,
+      setVolts: source.setVolts ?? null,
+      loadOhm: source.loadOhm ?? null,
+      heldVolts: source.heldGroupVolts ?? null,
+      totalOhm: moduleOhm + source.leadResistanceOhm,
+    },
     decays,
   );
 
@@ -44,7 +51,7 @@ export function chargeThroughTerminals(input: StepInput, options?: StepOptions):
     {
       atCoulombs: limit.atCoulombs,
       cutoffAmps: stop.cutoffAmps ?? 0,
-      groupVolts: stop.groupVolts,
+      groupVolts: stop.groupVolts ?? null,
       maxSeconds: stop.maxSeconds ?? Infinity,
     },
     moduleOhm,

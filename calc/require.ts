@@ -22,5 +22,10 @@ export function requireNotNegative(field: string, value: number): number {
 
 /** The same for what may be left out. */
 export function requirePositiveOrNull(field: string, value: number | null | undefined): void {
-  if (value !== null && value !== undefined) requirePositive(field, value);
+  if (isGiven(value)) requirePositive(field, value);
+}
+
+/** A value that may be left out, and was not. */
+export function isGiven(value: number | null | undefined): value is number {
+  return value !== null && value !== undefined;
 }

@@ -83,7 +83,7 @@ export class Laws {
     return this.ampsAt(kind, this.emf(y));
   }
 
-  ampsAt(kind: number, emf: number): number {
+  private ampsAt(kind: number, emf: number): number {
     const { loop, limits } = this;
     if (kind === SET) return (loop.sense * (limits.setVolts! - emf)) / Math.max(limits.totalOhm, LEAST_OHM);
     if (kind === LOAD) return emf / Math.max(limits.totalOhm + limits.loadOhm!, LEAST_OHM);
@@ -95,13 +95,12 @@ export class Laws {
     return divisor > 0 ? (2 * watts) / divisor : Infinity;
   }
 
-  /** The ruling law and nothing else; the first where several agree. */
+  /** The law with the least current; the first where several agree. */
   ruling(y: ArrayLike<number>): number {
-    const emf = this.emf(y);
     let best = Infinity;
     let ruling = this.kinds[0]!;
     for (const kind of this.kinds) {
-      const amps = kind === AMPS || kind >= HELD ? this.amps(kind, y) : this.ampsAt(kind, emf);
+      const amps = this.amps(kind, y);
       if (amps < best) {
         best = amps;
         ruling = kind;
@@ -110,12 +109,12 @@ export class Laws {
     return ruling;
   }
 
-  /** Least current of all laws but `ruling`, A; `emf` as just worked out for `y`. */
-  leastOther(ruling: number, y: ArrayLike<number>, emf: number): number {
+  /** Least current of all laws but `ruling`, A. */
+  leastOther(ruling: number, y: ArrayLike<number>): number {
     let least = Infinity;
     for (const kind of this.kinds) {
       if (kind === ruling) continue;
-      const amps = kind === AMPS || kind >= HELD ? this.amps(kind, y) : this.ampsAt(kind, emf);
+      const amps = this.amps(kind, y);
       if (amps < least) least = amps;
     }
     return least;

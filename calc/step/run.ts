@@ -1,5 +1,5 @@
 import type { TracePoint } from '../types';
-import { Laws } from './laws';
+import type { Laws } from './laws';
 import type { SeriesLoop } from './series-loop';
 
 /** How a stretch of one law ends. */

@@ -56,6 +56,8 @@ export class SeriesLoop {
   emf = 0;
   emfSlope = 0;
 
+  private lastQ = NaN;
+
   private readonly weights: number[] = [];
   private readonly slopeWeights: number[] = [];
   private readonly pieces: Int32Array;
@@ -83,17 +85,28 @@ export class SeriesLoop {
 
   /** Brings `emf` and `emfSlope` to the charge `q`, C. */
   at(q: number): void {
+    if (q === this.lastQ) return;
+    this.lastQ = q;
+    const { curves, pieces, startSoc, socPerCoulomb, weights, slopeWeights } = this;
     let emf = 0;
     let slope = 0;
-    for (let b = 0; b < this.counts.length; b++) {
-      const z = this.startSoc[b]! + this.socPerCoulomb[b]! * q;
-      const p = PIECE * this.locate(b, z);
-      const c = this.curves[b]!.pieces;
+    for (let b = 0; b < curves.length; b++) {
+      const z = startSoc[b]! + socPerCoulomb[b]! * q;
+      const curve = curves[b]!;
+      const knots = curve.knots;
+      // Found from where it was last: charge moves little between two calls.
+      let k = pieces[b]!;
+      while (k > 0 && z < knots[k - 1]!) k--;
+      while (k < knots.length && z >= knots[k]!) k++;
+      pieces[b] = k;
+      const c = curve.pieces;
+      const p = PIECE * k;
       const x = z - c[p]!;
+      const c1 = c[p + 2]!;
       const c2 = c[p + 3]!;
       const c3 = c[p + 4]!;
-      emf += this.weights[b]! * (c[p + 1]! + x * (c[p + 2]! + x * (c2 + x * c3)));
-      slope += this.slopeWeights[b]! * (c[p + 2]! + x * (2 * c2 + x * 3 * c3));
+      emf += weights[b]! * (c[p + 1]! + x * (c1 + x * (c2 + x * c3)));
+      slope += slopeWeights[b]! * (c1 + x * (2 * c2 + x * 3 * c3));
     }
     this.emf = emf;
     this.emfSlope = slope;
@@ -147,7 +160,7 @@ export class SeriesLoop {
     return c[p + 5]! + x * (c[p + 1]! + x * (c[p + 2]! / 2 + x * (c[p + 3]! / 3 + (x * c[p + 4]!) / 4)));
   }
 
-  /** The piece of branch `b` that holds `z`, found from where it was last: charge moves little between two calls. */
+  /** The piece of branch `b` that holds `z`. */
   private locate(b: number, z: number): number {
     const knots = this.curves[b]!.knots;
     let k = this.pieces[b]!;

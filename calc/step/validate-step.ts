@@ -1,5 +1,5 @@
 import { CalcInputError } from '../errors';
-import { requireFinite, requireNotNegative, requirePositive, requirePositiveOrNull } from '../require';
+import { isGiven, requireFinite, requireNotNegative, requirePositive, requirePositiveOrNull } from '../require';
 import type { CellGroup, Direction, Source, StepInput, StepStop } from '../types';
 
 /** @throws CalcInputError naming the first field that cannot be */
@@ -39,24 +39,24 @@ export function validateSource(field: string, source: Source, direction: Directi
   requirePositiveOrNull(`${field}.maxWatts`, source.maxWatts);
   requirePositiveOrNull(`${field}.heldGroupVolts`, source.heldGroupVolts);
   requireNotNegative(`${field}.leadResistanceOhm`, source.leadResistanceOhm);
-  if (source.loadOhm !== null) {
+  if (isGiven(source.loadOhm)) {
     requirePositive(`${field}.loadOhm`, source.loadOhm);
     if (direction === 'charge') throw new CalcInputError(`${field}.loadOhm`, source.loadOhm, 'empty for a charge');
   }
   const { maxAmps, setVolts, maxWatts, heldGroupVolts, loadOhm } = source;
-  if ([maxAmps, setVolts, maxWatts, heldGroupVolts, loadOhm].every((limit) => limit === null))
+  if ([maxAmps, setVolts, maxWatts, heldGroupVolts, loadOhm].every((limit) => !isGiven(limit)))
     throw new CalcInputError(`${field}.maxAmps`, null, 'given where nothing else limits the current');
 }
 
 export function validateStop(stop: StepStop): void {
   requireNotNegative('stop.toleranceVolts', stop.toleranceVolts);
-  if (stop.relaxedVolts !== null) requireFinite('stop.relaxedVolts', stop.relaxedVolts);
+  if (isGiven(stop.relaxedVolts)) requireFinite('stop.relaxedVolts', stop.relaxedVolts);
   const groupRelaxed = stop.groupRelaxedVolts ?? null;
   if (groupRelaxed !== null) requireFinite('stop.groupRelaxedVolts', groupRelaxed);
-  if (stop.cutoffAmps !== null) requireNotNegative('stop.cutoffAmps', stop.cutoffAmps);
-  if (stop.groupVolts !== null) requireFinite('stop.groupVolts', stop.groupVolts);
+  if (isGiven(stop.cutoffAmps)) requireNotNegative('stop.cutoffAmps', stop.cutoffAmps);
+  if (isGiven(stop.groupVolts)) requireFinite('stop.groupVolts', stop.groupVolts);
   const cap = stop.maxSeconds ?? null;
   if (cap !== null) requireNotNegative('stop.maxSeconds', cap);
-  if ([stop.relaxedVolts, groupRelaxed, stop.cutoffAmps, stop.groupVolts, cap].every((value) => value === null))
+  if ([stop.relaxedVolts, groupRelaxed, stop.cutoffAmps, stop.groupVolts, cap].every((value) => !isGiven(value)))
     throw new CalcInputError('stop', null, 'a target, an end current, a group limit or a time cap');
 }

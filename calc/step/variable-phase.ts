@@ -3,9 +3,11 @@ import { Laws } from './laws';
 import { RosenbrockStep } from './rosenbrock';
 import type { Ending, Run } from './run';
 
-/** Local error allowed: of the current as a share of it, and of the charge as a share of what the step brings. */
-const AMPS_TOLERANCE = 1e-4;
-const CHARGE_TOLERANCE = 3e-5;
+/** Local error allowed: of the current and of the charge a step brings, as shares; of the over-voltages, V. */
+const AMPS_TOLERANCE = 3e-4;
+const CHARGE_TOLERANCE = 1e-4;
+const OVER_TOLERANCE = 1e-5;
+const ROUNDING = 1e-13;
 /** Two laws agree within this share of the current. */
 const SWITCH_TOLERANCE = 1e-9;
 const MOST_STEPS = 100_000;
@@ -102,9 +104,17 @@ class VariablePhase {
   private errorSize(h: number): number {
     const { error } = this.method;
     let ofAmps = 0;
-    for (let j = 0; j < error.length; j++) ofAmps += this.gradient[j]! * error[j]!;
+    let ofOver = 0;
+    for (let j = 0; j < error.length; j++) {
+      ofAmps += this.gradient[j]! * error[j]!;
+      if (j > 0) ofOver = Math.max(ofOver, Math.abs(error[j]!));
+    }
     const amps = Math.abs(this.amps) + this.deadAmps;
-    return Math.max(Math.abs(ofAmps) / (AMPS_TOLERANCE * amps), Math.abs(error[0]!) / (CHARGE_TOLERANCE * amps * h));
+    return Math.max(
+      Math.abs(ofAmps) / (AMPS_TOLERANCE * amps),
+      Math.abs(error[0]!) / (CHARGE_TOLERANCE * amps * h + ROUNDING * Math.abs(this.phase.y[0]!)),
+      ofOver / OVER_TOLERANCE,
+    );
   }
 
   /** Takes the step to `method.result`, or the part of it up to the first event. */
@@ -115,12 +125,13 @@ class VariablePhase {
     this.rates(next, amps, nextRate);
     this.interpolate(next, 0.5, h, middle);
     const middleAmps = laws.amps(law, middle);
-
     const event = this.firstEvent(middle, middleAmps, 0, 0.5, h, next) ?? this.firstEvent(next, amps, 0.5, 1, h, next);
     if (event) return this.cut(event, h);
 
     this.commit(next, amps, middle, middleAmps, h);
-    if (!phase.signed && amps <= this.deadAmps && amps <= this.lastAmps) return { kind: 'dead' };
+    // With a time cap the rest is run out, so that the state at the cap is told.
+    const endless = !phase.signed && phase.stops.maxSeconds === Infinity;
+    if (endless && this.amps <= this.deadAmps && this.amps <= this.lastAmps) return { kind: 'dead' };
     return null;
   }
 
@@ -195,7 +206,7 @@ class VariablePhase {
         });
     if (laws.kinds.length > 1)
       list.push({
-        value: (y, amps) => amps - laws.leastOther(law, y, laws.emf(y)) - SWITCH_TOLERANCE * Math.abs(amps),
+        value: (y, amps) => amps - laws.leastOther(law, y) - SWITCH_TOLERANCE * Math.abs(amps),
         ending: () => ({ kind: 'switch', law: null }),
       });
     if (!phase.signed) list.push({ value: (_, amps) => -amps - 1e-12, ending: () => ({ kind: 'switch', law: null }) });
