@@ -1,8 +1,9 @@
-import type { ReactNode } from 'react';
+import { useContext, type ReactNode } from 'react';
 import { ScrollView, View } from 'react-native';
 import { makeStyles } from '../theme/make-styles';
 import { margin, widths } from '../theme/tokens';
 import { useBreakpoint } from '../theme/use-breakpoint';
+import { ShellStrip } from './shell-strip';
 
 /**
  * One screen: header, strip, scrolling body, foot. Rail and tab bar stand around it in `AppFrame`.
@@ -18,7 +19,7 @@ export function Screen({
   children,
 }: {
   header?: ReactNode;
-  /** `OfflineStrip`, under the header. */
+  /** Under the header; left out, the shell's own (no connection). */
   strip?: ReactNode;
   foot?: ReactNode;
   /** One column of at most 680 px on the desk too: forms and short lists. */
@@ -27,11 +28,12 @@ export function Screen({
 }) {
   const styles = useStyles();
   const at = useBreakpoint();
+  const shellStrip = useContext(ShellStrip);
   const narrow = at === 'tablet' || (at === 'wide' && single);
   return (
     <View role="main" style={styles.screen}>
       <View style={at === 'wide' && styles.wideEdge}>{header}</View>
-      {strip}
+      {strip ?? shellStrip}
       <ScrollView
         style={styles.scroll}
         contentContainerStyle={[styles.body, at === 'wide' && styles.wideEdge, at === 'wide' && styles.page]}
