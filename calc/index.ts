@@ -18,3 +18,7 @@ export { quantile, quantileOfSorted } from './statistics/quantile';
 export { seededRandom } from './statistics/seeded-random';
 export { latinHypercube, latinHypercubeNormal, shuffled } from './statistics/latin-hypercube';
 export { inverseNormal } from './statistics/inverse-normal';
+
+// The planner and the running charge.
+export { planCharge } from './plan/plan-charge';
+export { judgeCheck } from './plan/judge-check';

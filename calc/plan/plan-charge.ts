@@ -1,0 +1,170 @@
+import type {
+  ChannelParameters,
+  ChargePlan,
+  Finish,
+  PlanInput,
+  PlanOption,
+  Refusal,
+  RuledOutWay,
+  Way,
+} from '../plan-types';
+import { isPossible, type Draft, type NotPossible } from './draft';
+import { groupByGroupWay } from './group-by-group-way';
+import { paralleledWay } from './paralleled-way';
+import { planCautions } from './plan-cautions';
+import { planModel, type PlanModel } from './plan-model';
+import { refuseCharge } from './refuse-charge';
+import { resistorWay } from './resistor-way';
+import { takesOneGroup } from './single-group';
+import { terminalsWay } from './terminals-way';
+import { toOption } from './to-option';
+import { durationText, limitText } from './words';
+
+const FINISHES: readonly Finish[] = ['over-and-settle', 'on-the-mark'];
+
+/** A way that takes longer is left out, s, unless nothing is quicker. */
+const LONGEST_OFFERED_S = 36 * 3600;
+
+/**
+ * Plans a spare: every way, finish and channel that brings it to the target, soonest first, each with its band, steps,
+ * settings and cautions; what cannot be done with its reason; and the refusals where nothing may be done.
+ *
+ * Times are the core's (`chargeThroughTerminals` and its kin) on the nominal numbers, their bands come from a seeded sample
+ * set: the same input gives the same digits. Seconds count from the wished clip-on in an option, from now in `readyByS`,
+ * `clipOnAtS` and `latestStartS`.
+ *
+ * @throws CalcInputError for a curve that cannot be
+ */
+export function planCharge(input: PlanInput): ChargePlan {
+  const refusals = refuseCharge(input);
+  if (refusals.length > 0) return refused(input, refusals);
+  const model = planModel(input);
+  const plan: ChargePlan = {
+    direction: model.direction,
+    options: [],
+    ruledOut: [],
+    alreadyWithin: model.startVolts.every((volts) => Math.abs(volts - model.targetVolts) <= model.toleranceVolts),
+    refusals: [],
+    cautions: planCautions(model),
+    groupAmpHours: groupAmpHours(model),
+    startVolts: model.startVolts,
+  };
+  if (plan.alreadyWithin) return plan;
+
+  let ceilings = 0;
+  const take = (
+    way: Way,
+    finish: Finish,
+    channel: { id: string | null; name: string | null },
+    found: Draft | NotPossible,
+  ): void => {
+    if (isPossible(found)) plan.options.push(toOption(model, found));
+    else {
+      if (found.ceiling) ceilings += 1;
+      plan.ruledOut.push({ way, finish, channelId: channel.id, channelName: channel.name, reason: found.reason });
+    }
+  };
+  forEachWay(model, take);
+  plan.options.sort((a, b) => a.totalS.p50 - b.totalS.p50 || a.handsOnS - b.handsOnS);
+  leaveOutLong(plan, model);
+  markSoonest(plan.options);
+  if (plan.options.length === 0 && ceilings > 0) plan.refusals.push(ceilingRefusal(model, plan.ruledOut));
+  return plan;
+}
+
+type Take = (
+  way: Way,
+  finish: Finish,
+  channel: { id: string | null; name: string | null },
+  found: Draft | NotPossible,
+) => void;
+
+function forEachWay(model: PlanModel, take: Take): void {
+  const { channels, resistors, neighbour } = model.input;
+  const named = (channel: ChannelParameters): { id: string; name: string } => ({
+    id: channel.channelId,
+    name: channel.name,
+  });
+  const severalGroups = model.groups.length > 1;
+  const single = channels.filter((channel) => channel.singleGroup && takesOneGroup(channel));
+  for (const finish of FINISHES) {
+    for (const channel of channels) {
+      take('terminals', finish, named(channel), terminalsWay(model, channel, finish));
+      if (!severalGroups) continue;
+      take('group-by-group', finish, named(channel), groupByGroupWay(model, [channel], finish));
+      take('paralleled', finish, named(channel), paralleledWay(model, channel, finish));
+    }
+    if (severalGroups && single.length > 1) {
+      const names = single.map((channel) => channel.name).join(' + ');
+      const found = groupByGroupWay(model, single, finish);
+      // Where one of them alone is quicker than sharing, it stands there by itself already.
+      if (!isPossible(found) || new Set(found.steps.map((step) => step.channel?.channelId)).size > 1)
+        take('group-by-group', finish, { id: null, name: names }, found);
+    }
+  }
+  if (neighbour === null) return;
+  if (resistors.length === 0)
+    take('resistor', 'over-and-settle', { id: null, name: null }, { reason: "No resistor is on the workshop's list." });
+  for (const resistor of resistors)
+    take('resistor', 'over-and-settle', { id: null, name: resistor.name }, resistorWay(model, neighbour, resistor));
+}
+
+function leaveOutLong(plan: ChargePlan, model: PlanModel): void {
+  const offered = plan.options.filter((option) => option.totalS.p50 - option.queueS <= LONGEST_OFFERED_S);
+  if (offered.length === 0) return;
+  for (const option of plan.options) {
+    if (offered.includes(option)) continue;
+    const channel = model.input.channels.find((one) => one.channelId === option.channelIds[0]);
+    const resistor = model.input.resistors.find((one) => one.resistorId === option.steps[0]?.resistorId);
+    plan.ruledOut.push({
+      way: option.way,
+      finish: option.finish,
+      channelId: channel?.channelId ?? null,
+      channelName: channel?.name ?? resistor?.name ?? null,
+      reason: `Would take ${durationText(option.totalS.p50 - option.queueS)} and is left out.`,
+    });
+  }
+  plan.options = offered;
+}
+
+/** Only what ends inside the tolerance is marked; what must come apart competes for the first mark, not for the second. */
+function markSoonest(options: PlanOption[]): void {
+  const good = options.filter((option) => option.withinTolerance);
+  if (good[0]) good[0].soonest = true;
+  const stays = good.find((option) => !option.busbarsOff);
+  if (stays) stays.soonestBusbarsStay = true;
+}
+
+function groupAmpHours(model: PlanModel): number[] {
+  return model.startSoc.map((soc, group) => {
+    const needed = (model.targetSoc - soc) * model.groups[group]!.capacityAh;
+    return needed > 0 ? needed / model.efficiency : needed;
+  });
+}
+
+function ceilingRefusal(model: PlanModel, ruledOut: RuledOutWay[]): Refusal {
+  const fixed = model.input.channels.filter((channel) => !channel.adjustableVolts);
+  const lowest = fixed.reduce((least, channel) => (channel.maxVolts < least.maxVolts ? channel : least), fixed[0]!);
+  const reason = ruledOut.find(
+    (one) => one.channelId === lowest.channelId && one.way === 'terminals' && one.finish === 'over-and-settle',
+  )?.reason;
+  return {
+    code: 'ceiling',
+    group: null,
+    text: `${reason ?? `${lowest.name} always charges to ${limitText(lowest.maxVolts)}.`} Take a charger whose voltage can be set.`,
+  };
+}
+
+function refused(input: PlanInput, refusals: Refusal[]): ChargePlan {
+  const sum = input.spare.groupVolts.reduce((total, volts) => total + volts, 0);
+  return {
+    direction: sum <= input.target.volts * input.spare.groupVolts.length ? 'charge' : 'discharge',
+    options: [],
+    ruledOut: [],
+    alreadyWithin: false,
+    refusals,
+    cautions: [],
+    groupAmpHours: [],
+    startVolts: [...input.spare.groupVolts],
+  };
+}

@@ -1,0 +1,131 @@
+import type { OcvTable } from '../types';
+import type { Doubt, Spreads } from '../plan-types';
+import { socAtVolts } from '../curve/ocv';
+import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
+import { inverseNormal } from '../statistics/inverse-normal';
+import { latinHypercube } from '../statistics/latin-hypercube';
+
+/** What one axis of the sample set stands for. */
+const AXES = [
+  'capacity',
+  'resistance',
+  'current',
+  'spare-meter',
+  'spare-scatter',
+  'spare-hysteresis',
+  'self-discharge',
+  'target-meter',
+  'target-scatter',
+  'target-hysteresis',
+  'charger-meter',
+  'curve',
+  'temperature',
+] as const;
+type Axis = (typeof AXES)[number];
+
+/** The number a person would measure better to be rid of an axis. */
+export const DOUBT_OF_AXIS: Record<Axis, Doubt> = {
+  capacity: 'capacity',
+  resistance: 'resistance',
+  current: 'current',
+  'spare-meter': 'spare-reading',
+  'spare-scatter': 'spare-reading',
+  'spare-hysteresis': 'curve',
+  'self-discharge': 'spare-reading',
+  'target-meter': 'target-reading',
+  'target-scatter': 'target-reading',
+  'target-hysteresis': 'curve',
+  'charger-meter': 'target-reading',
+  curve: 'curve',
+  temperature: 'temperature',
+};
+
+/** The module as one sample sees it. */
+export interface Sample {
+  /** Of each group at the clip-on. */
+  startSoc: number[];
+  /** At which a group truly rests at the target. */
+  targetSoc: number;
+  capacityAh: number[];
+  /** R0 + R1 of each group, ohm. */
+  longOhm: number[];
+  /** Of a source's current over what it is set to. */
+  currentFactor: number;
+  /** Per group: what a rest voltage of the spare's meter is more on the curve, V. */
+  spareShiftVolts: number;
+  /** Per group: what a rest voltage of the target's meter is more on the curve, V. */
+  targetShiftVolts: number;
+  /** Offset of the curve: what any true voltage is more on it, V per group. */
+  curveShiftVolts: number;
+  /** Standard deviations that a charger's own voltmeter is off. */
+  chargerDraw: number;
+  /** The draws behind it, one per axis, for the shares of the doubts. */
+  draws: number[];
+}
+
+export interface SampleBasis {
+  curve: OcvTable;
+  /** Rest volts as read, per group. */
+  readVolts: number[];
+  /** Charge lost on the shelf since, as a share of the capacity. */
+  lostSoc: number;
+  targetVolts: number;
+  capacityAh: number[];
+  longOhm: number[];
+  celsius: number;
+  /** One meter read both spare and target. */
+  sameMeter: boolean;
+  spreads: Spreads;
+}
+
+/**
+ * The seeded sample set of a plan: Latin hypercube over the doubts, one offset per meter and one of the curve.
+ *
+ * A meter that read both spare and pack has one offset, so that it cancels but for the curve's slopes. Capacities and
+ * resistances are drawn by their logarithm, hysteresis evenly over its loop, everything else normally. One sample alone is
+ * the nominal run.
+ */
+export function drawSamples(basis: SampleBasis, count: number, seed: number): Sample[] {
+  if (count === 1) return [toSample(basis, new Array<number>(AXES.length).fill(0.5))];
+  return latinHypercube(count, AXES.length, seed).map((point) => toSample(basis, point));
+}
+
+/** The axes in the order of `Sample.draws`. */
+export const SAMPLE_AXES: readonly Axis[] = AXES;
+
+function toSample(basis: SampleBasis, point: readonly number[]): Sample {
+  const { spreads, curve } = basis;
+  const normal = (axis: Axis): number => inverseNormal(point[AXES.indexOf(axis)]!);
+  const even = (axis: Axis): number => 2 * point[AXES.indexOf(axis)]! - 1;
+  const capacityFactor = Math.exp(spreads.capacityRelative * normal('capacity'));
+  const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * normal('temperature')));
+  const resistanceFactor =
+    Math.exp(spreads.resistanceRelative * normal('resistance')) *
+    (resistanceTemperatureFactor(celsius) / resistanceTemperatureFactor(basis.celsius));
+  const curveShift = -spreads.curveVolts * normal('curve');
+  const spareMeter = spreads.meterVolts * normal('spare-meter');
+  const targetMeter = basis.sameMeter ? spareMeter : spreads.meterVolts * normal('target-meter');
+  const spareShift =
+    curveShift +
+    spareMeter +
+    (spreads.readingVolts * normal('spare-scatter')) / Math.sqrt(basis.readVolts.length) +
+    spreads.hysteresisVolts * even('spare-hysteresis');
+  const targetShiftVolts =
+    curveShift +
+    targetMeter +
+    spreads.targetVolts * normal('target-scatter') +
+    spreads.hysteresisVolts * even('target-hysteresis');
+  const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * normal('self-discharge'));
+  return {
+    startSoc: basis.readVolts.map((volts) => socAtVolts(curve, volts + spareShift) - lost),
+    targetSoc: socAtVolts(curve, basis.targetVolts + targetShiftVolts),
+    capacityAh: basis.capacityAh.map((ampHours) => ampHours * capacityFactor),
+    longOhm: basis.longOhm.map((ohm) => ohm * resistanceFactor),
+    currentFactor: Math.exp(spreads.currentRelative * normal('current')),
+    spareShiftVolts: spareShift,
+    targetShiftVolts,
+    curveShiftVolts: curveShift,
+    chargerDraw: normal('charger-meter'),
+    draws: point.map((value) => inverseNormal(value)),
+  };
+}

@@ -1,0 +1,227 @@
+import { chargeThroughTerminals } from '../charge-through-terminals';
+import { voltsAtSoc } from '../curve/ocv';
+import type { ChannelParameters, Finish, StepKind, Way } from '../plan-types';
+import type { CellGroup, Direction, StepResult } from '../types';
+import { currentSeconds, type CurrentLaw } from './current-seconds';
+import type { DraftStep, NotPossible } from './draft';
+import type { PlanModel } from './plan-model';
+import type { Sample } from './samples';
+import { settleSource, type SourceSettings } from './source-settings';
+import { ampHoursToFirst, ampHoursToVolts, stringCharge, stringVolts, type StringCharge } from './string-charge';
+import { ampsText, groupText, limitText, millivoltsText } from './words';
+
+/** The least current of a sample that would never end, as a share of the set one. */
+const LEAST_SHARE = 0.01;
+
+export interface SeriesStepInput {
+  model: PlanModel;
+  kind: StepKind;
+  way: Way;
+  channel: ChannelParameters;
+  finish: Finish;
+  direction: Direction;
+  /** 0-based groups of the module it moves. */
+  groupIndexes: number[];
+  /** Groups between the clips as the core sees them: those of `groupIndexes`, or the one they are joined to. */
+  groups: CellGroup[];
+  linkOhm: number;
+  limitTimes: number;
+  /** Summed rest voltage aimed at, V; with `first` the sum at that state. */
+  aimVolts: number;
+  /** Ends when the first group is at the target, and not by the sum. */
+  first: boolean;
+  /** What may stay short on the mark, V over the groups. */
+  markVolts: number;
+  /** State of all groups before the step, nominal. */
+  socBefore: number[];
+  /** The string between the clips in one sample. */
+  stringIn: (sample: Sample) => { string: StringCharge; ohm: number };
+}
+
+/** Runs one step between two clips and makes it ready for the band. */
+export function seriesStep(input: SeriesStepInput): DraftStep | NotPossible {
+  const { model, channel, finish, direction, groups, aimVolts } = input;
+  const sign = direction === 'charge' ? 1 : -1;
+  const settings = settleSource({
+    model,
+    channel,
+    direction,
+    finish,
+    groups,
+    linkOhm: input.linkOhm,
+    limitTimes: input.limitTimes,
+    aimVolts,
+  });
+  if ('reason' in settings) return settings;
+  const { module } = model.input;
+  const onTheMark = finish === 'on-the-mark';
+  const byGroup = input.first && !onTheMark;
+  const result = chargeThroughTerminals(
+    {
+      groups,
+      curve: model.curve,
+      linkResistanceOhm: input.linkOhm,
+      coulombicEfficiency: model.efficiency,
+      direction,
+      source: settings.source,
+      stop: {
+        relaxedVolts: byGroup ? null : aimVolts,
+        toleranceVolts: onTheMark ? input.markVolts : 0,
+        groupRelaxedVolts: byGroup ? model.targetVolts : null,
+        cutoffAmps: onTheMark && channel.minAmps > 0 ? channel.minAmps : null,
+        groupVolts: direction === 'charge' ? module.chargeLimitVolts : module.dischargeLimitVolts,
+      },
+      settledVolts: model.settledVolts(groups.length),
+    },
+    { trace: true },
+  );
+  const failed = failure(input, settings, result);
+  if (failed) return failed;
+  return toDraftStep(input, settings, result, sign);
+}
+
+function failure(input: SeriesStepInput, settings: SourceSettings, result: StepResult): NotPossible | null {
+  const { channel, model, aimVolts, groups, direction, groupIndexes } = input;
+  if (result.outcome === 'target') return null;
+  if (result.outcome === 'group-limit') {
+    const group = groupIndexes[result.limitingGroup ?? 0]!;
+    const limit = direction === 'charge' ? model.input.module.chargeLimitVolts : model.input.module.dischargeLimitVolts;
+    return {
+      reason: `At ${ampsText(settings.source.maxAmps ?? result.endAmps)} ${groupText(group)} would be at its ${limitText(limit)} before the target. Take fewer amps.`,
+    };
+  }
+  if (result.outcome === 'cutoff') {
+    const short = Math.abs(aimVolts - result.relaxedVolts) / groups.length;
+    if (short <= model.toleranceVolts) return null;
+    return {
+      reason: `${channel.name} holds no less than ${ampsText(channel.minAmps)} and would end ${millivoltsText(short)} short.`,
+    };
+  }
+  return {
+    reason: `Unreachable with ${channel.name}: ${lowerFirst(result.reason ?? 'the current dies away before the target.')}`,
+  };
+}
+
+const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);
+
+function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: StepResult, sign: 1 | -1): DraftStep {
+  const { model, groups, groupIndexes, finish, direction } = input;
+  const joined = groups.length === 1 && groupIndexes.length > 1;
+  const socAfter = [...input.socBefore];
+  groupIndexes.forEach((group, at) => (socAfter[group] = result.groups[joined ? 0 : at]!.soc));
+  const run = sampleRun(input, settings, sign, finish);
+  const quadrature = run(model.nominal).seconds;
+  const scale = quadrature > 0 ? result.stopAtS / quadrature : 0;
+  return {
+    kind: input.kind,
+    way: input.way,
+    channel: input.channel,
+    resistorId: null,
+    groupIndexes,
+    direction,
+    setVolts: settings.setVolts,
+    setAmps: settings.setAmps,
+    seconds: result.stopAtS,
+    voltageLimitAtS: result.voltageLimitAtS,
+    ampHours: result.ampHours,
+    wattHours: result.wattHours,
+    endAmps: result.endAmps,
+    settleS: result.settleS,
+    socAfter,
+    polarisationAfter: groupIndexes.map((_, at) => result.groups[joined ? 0 : at]!.polarisationVolts),
+    trace: result.trace ?? [],
+    groupsAcross: groups.length,
+    capVolts: settings.capVolts,
+    secondsIn: (sample) => run(sample).seconds * scale,
+    ampHoursIn: (sample) => run(sample).ampHours,
+  };
+}
+
+/**
+ * The same step in one sample, by quadrature: until the sample's own target (over and settle), or until the current has
+ * fallen as far as it falls at the nominal end (on the mark: the charger's voltmeter decides, and people go by the amps).
+ */
+function sampleRun(
+  input: SeriesStepInput,
+  settings: SourceSettings,
+  sign: 1 | -1,
+  finish: Finish,
+): (sample: Sample) => { seconds: number; ampHours: number } {
+  const { aimVolts, model, channel, groups } = input;
+  const { source, setVolts } = settings;
+  const count = groups.length;
+  const known = new WeakMap<Sample, { seconds: number; ampHours: number }>();
+  const leadOhm = source.leadResistanceOhm + input.linkOhm;
+  const chargerSd =
+    model.input.spreads?.chargerVolts === undefined && channel.offsetSdVolts !== null
+      ? channel.offsetSdVolts
+      : model.spreads.chargerVolts * count;
+  const nominalOhm = leadOhm + input.stringIn(model.nominal).ohm;
+  const markVolts = Math.max(input.markVolts, channel.minAmps * nominalOhm);
+  const endAmps =
+    finish === 'on-the-mark' && setVolts !== null
+      ? Math.max((sign * (setVolts - aimVolts) + markVolts) / nominalOhm, 1e-4)
+      : null;
+  return (sample) => {
+    const before = known.get(sample);
+    if (before) return before;
+    const { string, ohm } = input.stringIn(sample);
+    const maxAmps = (source.maxAmps ?? Infinity) * sample.currentFactor;
+    const law: CurrentLaw = {
+      openVolts: (ampHours) => stringVolts(string, ampHours),
+      sign,
+      maxAmps,
+      setVolts: setVolts === null ? null : setVolts + count * sample.curveShiftVolts + chargerSd * sample.chargerDraw,
+      maxWatts: source.maxWatts,
+      resistanceOhm: ohm + leadOhm,
+      loadOhm: source.loadOhm,
+      leastAmps: endAmps ?? (source.maxAmps ?? 1) * LEAST_SHARE,
+    };
+    const goal =
+      endAmps !== null && law.setVolts !== null
+        ? law.setVolts - sign * endAmps * law.resistanceOhm
+        : aimVolts + count * sample.targetShiftVolts;
+    const ampHours =
+      input.first && endAmps === null
+        ? Math.max(0, ampHoursToFirst(string, sample.targetSoc))
+        : ampHoursToVolts(string, goal);
+    const found = { seconds: currentSeconds(law, ampHours), ampHours };
+    known.set(sample, found);
+    return found;
+  };
+}
+
+/** The module's own groups as a string in one sample, after what earlier steps have moved. */
+export function sampleString(
+  model: PlanModel,
+  groupIndexes: number[],
+  direction: Direction,
+  movedAmpHours: (sample: Sample, group: number) => number,
+): SeriesStepInput['stringIn'] {
+  return (sample) => {
+    const perAmpHour = groupIndexes.map((group) =>
+      direction === 'charge' ? model.efficiency / sample.capacityAh[group]! : -1 / sample.capacityAh[group]!,
+    );
+    const soc = groupIndexes.map((group) => {
+      const moved = movedAmpHours(sample, group);
+      const share = moved > 0 ? moved * model.efficiency : moved;
+      return sample.startSoc[group]! + share / sample.capacityAh[group]!;
+    });
+    const ohm = groupIndexes.reduce((sum, group) => sum + sample.longOhm[group]!, 0);
+    return { string: stringCharge(model.curve, soc, perAmpHour), ohm };
+  };
+}
+
+/** The nominal groups as the core takes them, at a state and with what over-voltage is left. */
+export function groupsAt(
+  model: PlanModel,
+  groupIndexes: number[],
+  soc: readonly number[],
+  polarisation?: readonly number[],
+): CellGroup[] {
+  return groupIndexes.map((group) => ({
+    ...model.groups[group]!,
+    restVolts: voltsAtSoc(model.curve, soc[group]!),
+    polarisationVolts: polarisation?.[group] ?? 0,
+  }));
+}
