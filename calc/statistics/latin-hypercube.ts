@@ -4,7 +4,8 @@ import { seededRandom } from './seeded-random';
 
 /**
  * `count` points in the unit cube of `dimensions` such that each of `count` equal slices of every axis holds exactly
- * one. Source: M. D. McKay, R. J. Beckman, W. J. Conover, Technometrics 21 (1979) 239–245.
+ * one, at the slice's middle. So each axis alone is spread as evenly as can be, whatever the seed. Source: M. D. McKay,
+ * R. J. Beckman, W. J. Conover, Technometrics 21 (1979) 239–245.
  *
  * @param seed the same seed gives the same points to the last digit
  * @returns one row a point, every value inside (0, 1)
@@ -18,10 +19,7 @@ export function latinHypercube(count: number, dimensions: number, seed: number):
   const points: number[][] = Array.from({ length: count }, () => new Array<number>(dimensions).fill(0));
   for (let d = 0; d < dimensions; d++) {
     const slices = shuffled(count, random);
-    for (let i = 0; i < count; i++) {
-      const inside = Math.min(1 - 1e-12, Math.max(1e-12, random()));
-      points[i]![d] = (slices[i]! + inside) / count;
-    }
+    for (let i = 0; i < count; i++) points[i]![d] = (slices[i]! + 0.5) / count;
   }
   return points;
 }
