@@ -2,6 +2,7 @@ import type { Ref } from 'react';
 import { Pressable, type View, type StyleProp, type ViewStyle } from 'react-native';
 import { Icon } from '../icons/icon';
 import type { IconName } from '../icons/icon-paths';
+import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { radius, stroke, touch, type ColorRole } from '../theme/tokens';
 import { web } from '../theme/web-props';
@@ -88,22 +89,23 @@ export function Button({
   );
 }
 
-const useStyles = makeStyles(({ colors }) => ({
+const useStyles = makeStyles((theme) => ({
   box: {
     flexDirection: 'row',
     alignItems: 'center',
     justifyContent: 'center',
     columnGap: 10,
     borderRadius: radius.control,
-    borderWidth: stroke.control,
     paddingVertical: 6,
   },
   grow: { flexGrow: 1, flexShrink: 1, flexBasis: 0 },
-  primary: { backgroundColor: colors.ink, borderColor: colors.ink },
-  primaryPressed: { backgroundColor: colors.ink2, borderColor: colors.ink2 },
-  line: { borderColor: colors.edge },
-  danger: { borderColor: colors.alarm },
-  pressed: { backgroundColor: colors.well },
-  off: { backgroundColor: colors.well, borderColor: colors.well },
+  primary: { backgroundColor: theme.colors.ink, ...(theme.forced && innerFrame(theme, 2, theme.colors.ink)) },
+  primaryPressed: { backgroundColor: theme.colors.ink2 },
+  line: innerFrame(theme, stroke.control, theme.colors.edge),
+  danger: innerFrame(theme, stroke.control, theme.colors.alarm),
+  pressed: { backgroundColor: theme.colors.well },
+  off: theme.forced
+    ? { borderWidth: stroke.control, borderStyle: 'dashed', borderColor: 'var(--bw-gray)' }
+    : { backgroundColor: theme.colors.well },
   smallWord: { fontSize: 15, lineHeight: 20 },
 }));

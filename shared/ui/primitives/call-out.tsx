@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { StyleSheet, View, type StyleProp, type ViewStyle } from 'react-native';
 import { StageGlyph } from '../stage/stage-glyph';
+import { innerFrame } from '../theme/frame';
 import { Surface } from '../theme/surface';
 import { useTheme } from '../theme/theme';
 import { radius, stroke } from '../theme/tokens';
@@ -24,14 +25,14 @@ export function CallOut({
   style?: StyleProp<ViewStyle>;
   children: ReactNode;
 }) {
-  const { colors } = useTheme();
+  const theme = useTheme();
   const red = tone === 'red';
   return (
     <Surface
       tone={red ? 'alarmTint' : 'checkDueTint'}
       role={announce ? 'alert' : label ? 'region' : undefined}
       aria-label={label}
-      style={[styles.box, { borderColor: red ? colors.alarm : colors.ink }, style]}
+      style={[styles.box, innerFrame(theme, stroke.control, red ? theme.colors.alarm : theme.colors.ink), style]}
     >
       {children}
     </Surface>
@@ -56,7 +57,7 @@ export const StandingLine = ({ style }: { style?: StyleProp<ViewStyle> }) => (
 );
 
 const styles = StyleSheet.create({
-  box: { borderRadius: radius.sheet, borderWidth: stroke.control, padding: 14 - stroke.control },
+  box: { borderRadius: radius.sheet, padding: 14 },
   caution: {
     flexDirection: 'row',
     alignItems: 'center',

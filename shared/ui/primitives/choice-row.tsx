@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { Pressable, View } from 'react-native';
 import { Icon } from '../icons/icon';
+import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { OnSurface } from '../theme/surface';
 import { radius, stroke } from '../theme/tokens';
@@ -61,7 +62,7 @@ export function ChoiceRow({
       {...web({ tabIndex: walking.tabIndex, onKeyDown: walking.onKeyDown, dataSet: { press: '' } })}
       style={({ pressed }) => [
         styles.row,
-        { marginHorizontal: -outset, paddingHorizontal: Math.max(outset, 12) - stroke.chosen },
+        { marginHorizontal: -outset, paddingHorizontal: Math.max(outset, 12) },
         pressed && !chosen && !disabled && styles.pressed,
         chosen && styles.chosen,
       ]}
@@ -144,41 +145,37 @@ export function ChoiceList<V extends string>({
   );
 }
 
-const useStyles = makeStyles(({ colors }) => ({
+const useStyles = makeStyles((theme) => ({
   radio: {
     width: 22,
     height: 22,
     borderRadius: 11,
-    borderWidth: 2,
-    borderColor: colors.edge,
+    ...innerFrame(theme, 2, theme.colors.edge),
     alignItems: 'center',
     justifyContent: 'center',
   },
-  radioOn: { borderColor: colors.ink },
-  radioDot: { width: 12, height: 12, borderRadius: 6, backgroundColor: colors.ink },
+  radioOn: innerFrame(theme, 2, theme.colors.ink),
+  radioDot: { width: 12, height: 12, borderRadius: 6, backgroundColor: theme.colors.ink },
   tick: {
     width: 26,
     height: 26,
     borderRadius: radius.dock,
-    borderWidth: 2,
-    borderColor: colors.edge,
+    ...innerFrame(theme, 2, theme.colors.edge),
     alignItems: 'center',
     justifyContent: 'center',
   },
-  tickOn: { backgroundColor: colors.ink, borderColor: colors.ink },
-  tickOff: { backgroundColor: colors.well, borderColor: colors.well },
+  tickOn: { backgroundColor: theme.colors.ink, ...innerFrame(theme, 2, theme.colors.ink) },
+  tickOff: { backgroundColor: theme.colors.well, boxShadow: 'none' },
   row: {
     flexDirection: 'row',
     alignItems: 'center',
     columnGap: 12,
     minHeight: 52,
-    paddingVertical: 7 - stroke.chosen,
+    paddingVertical: 7,
     borderRadius: radius.sheet,
-    borderWidth: stroke.chosen,
-    borderColor: 'transparent',
   },
-  pressed: { backgroundColor: colors.well },
-  chosen: { backgroundColor: colors.sheet, borderColor: colors.ink },
+  pressed: { backgroundColor: theme.colors.well },
+  chosen: { backgroundColor: theme.colors.sheet, ...innerFrame(theme, stroke.chosen, theme.colors.ink) },
   words: { flex: 1, minWidth: 0 },
   title: { lineHeight: 20 },
 }));

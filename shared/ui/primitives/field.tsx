@@ -1,5 +1,6 @@
 import { useId, useImperativeHandle, useRef, useState, type ReactNode, type Ref } from 'react';
 import { TextInput, View, type TextInputProps } from 'react-native';
+import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
 import { web } from '../theme/web-props';
@@ -156,25 +157,19 @@ export function Field({
 }
 
 const numM = typeScale.numM;
-const useStyles = makeStyles(({ colors }) => ({
-  // The frame is an inner margin, so that a thicker frame never moves what is typed.
+const useStyles = makeStyles((theme) => ({
   box: {
     flexDirection: 'row',
     alignItems: 'center',
     columnGap: 8,
     borderRadius: radius.control,
-    backgroundColor: colors.sheet,
-    borderColor: colors.edge,
-    borderWidth: stroke.control,
-    paddingHorizontal: 14 - stroke.control,
+    backgroundColor: theme.colors.sheet,
+    paddingHorizontal: 14,
+    ...innerFrame(theme, stroke.control, theme.colors.edge),
   },
-  focused: {
-    borderColor: colors.focus,
-    borderWidth: stroke.focus,
-    paddingHorizontal: 14 - stroke.focus,
-  },
-  bad: { borderColor: colors.alarm, borderWidth: stroke.chosen, paddingHorizontal: 14 - stroke.chosen },
-  readOnly: { backgroundColor: 'transparent', borderColor: 'transparent', paddingHorizontal: 0 },
+  focused: innerFrame(theme, stroke.focus, theme.colors.focus),
+  bad: innerFrame(theme, stroke.chosen, theme.colors.alarm),
+  readOnly: { backgroundColor: 'transparent', boxShadow: 'none', borderWidth: 0, paddingHorizontal: 0 },
   tall: { alignItems: 'flex-start' },
   input: {
     flexGrow: 1,
@@ -183,7 +178,7 @@ const useStyles = makeStyles(({ colors }) => ({
     minWidth: 0,
     alignSelf: 'stretch',
     paddingVertical: 8,
-    color: colors.ink,
+    color: theme.colors.ink,
     fontFamily: faceStacks.text,
     fontSize: typeScale.body.size,
     lineHeight: typeScale.body.line,
@@ -196,5 +191,5 @@ const useStyles = makeStyles(({ colors }) => ({
     fontSize: typeScale.numL.size,
     lineHeight: typeScale.numL.line,
   },
-  placeholder: { color: colors.ink2 },
+  placeholder: { color: theme.colors.ink2 },
 }));

@@ -1,6 +1,7 @@
 import { Pressable, View } from 'react-native';
 import { Icon } from '../icons/icon';
 import type { IconName } from '../icons/icon-paths';
+import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { radius, stroke, touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
@@ -47,7 +48,7 @@ export function IconButton({
   );
 }
 
-const useStyles = makeStyles(({ colors }) => ({
+const useStyles = makeStyles((theme) => ({
   box: {
     width: touch.min,
     height: touch.min,
@@ -55,7 +56,7 @@ const useStyles = makeStyles(({ colors }) => ({
     justifyContent: 'center',
     borderRadius: radius.control,
   },
-  framed: { borderWidth: stroke.control, borderColor: colors.edge },
-  pressed: { backgroundColor: colors.well },
+  framed: innerFrame(theme, stroke.control, theme.colors.edge),
+  pressed: { backgroundColor: theme.colors.well },
   badge: { position: 'absolute', top: 2, right: 0 },
 }));

@@ -1,4 +1,4 @@
-import { Pressable, StyleSheet, type StyleProp, type ViewStyle } from 'react-native';
+import { Pressable, StyleSheet, type StyleProp, type TextStyle, type ViewStyle } from 'react-native';
 import { touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import { Txt, type TextTone } from './txt';
@@ -16,6 +16,7 @@ export function Link({
   label,
   tight = false,
   disabled = false,
+  align = 'left',
   style,
 }: {
   title: string;
@@ -28,6 +29,8 @@ export function Link({
   label?: string;
   tight?: boolean;
   disabled?: boolean;
+  /** The side of the 48 px target its word stands at, where the word is shorter. */
+  align?: 'left' | 'right';
   style?: StyleProp<ViewStyle>;
 }) {
   const address = href
@@ -47,9 +50,9 @@ export function Link({
       aria-disabled={disabled || undefined}
       onPress={disabled || href ? undefined : onPress}
       {...web(address ?? {})}
-      style={[styles.target, tight && styles.tight, style]}
+      style={[styles.target, tight && styles.tight, align === 'right' && styles.right, style]}
     >
-      <Txt kind={kind} tone={disabled ? 'ink3' : tone} nowrap {...web({ dataSet: { underline: '' } })}>
+      <Txt kind={kind} tone={disabled ? 'ink3' : tone} nowrap style={styles.word}>
         {title}
       </Txt>
     </Pressable>
@@ -59,4 +62,6 @@ export function Link({
 const styles = StyleSheet.create({
   target: { minHeight: touch.min, minWidth: touch.min, justifyContent: 'center' },
   tight: { marginVertical: -14 },
+  right: { alignItems: 'flex-end' },
+  word: { textDecorationLine: 'underline', textUnderlineOffset: 3 } as TextStyle,
 });

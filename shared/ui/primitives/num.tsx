@@ -20,10 +20,15 @@ const hourShare = (kind: NumKind) => (kind === 'numS' || kind === 'numXS' ? 0.72
 const small = (kind: NumKind, share: number): TextStyle => ({
   fontSize: typeScale[kind].size * share,
   fontWeight: '500',
+  // The line keeps the height of the number.
+  lineHeight: 0,
 });
 /** A leading 1 leaves a hole at the left edge of a hero number. */
 const pulled = (kind: NumKind, text: string): TextStyle | null =>
   (kind === 'hero' || kind === 'live') && text.startsWith('1') ? { marginLeft: -0.06 * typeScale[kind].size } : null;
+
+/** Spaces are text, so that a number reads and copies as '3 h 05'; their sizes keep the digits in the lead. */
+const Space = ({ size }: { size: number }) => <Text style={{ fontSize: size, lineHeight: 0 }}>{NBSP}</Text>;
 
 /** A number with its unit small and after: `<Num value={voltsNumber(3.968)} unit="V" kind="numL" />`. */
 export function Num({
@@ -37,7 +42,8 @@ export function Num({
   return (
     <Txt kind={kind} tone={tone} align={align} nowrap style={[pulled(kind, value), style]}>
       {value}
-      {unit ? <Text style={small(kind, unitShare(kind))}>{`${NBSP}${unit}`}</Text> : null}
+      {unit ? <Space size={typeScale[kind].size * unitShare(kind) * 0.75} /> : null}
+      {unit ? <Text style={small(kind, unitShare(kind))}>{unit}</Text> : null}
     </Txt>
   );
 }
@@ -64,10 +70,9 @@ export function Duration({
   return (
     <Txt kind={kind} tone={tone} align={align} nowrap style={[pulled(kind, parts.hours), style]}>
       {parts.hours}
-      {/* The spaces are text, so that it reads and copies as '3 h 05'; their sizes keep the digits in the lead. */}
-      <Text style={{ fontSize: size * 0.24 }}>{NBSP}</Text>
+      <Space size={size * 0.24} />
       <Text style={small(kind, hourShare(kind))}>h</Text>
-      <Text style={{ fontSize: size * 0.5 }}>{NBSP}</Text>
+      <Space size={size * 0.5} />
       {parts.minutes}
     </Txt>
   );

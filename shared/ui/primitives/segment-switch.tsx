@@ -1,4 +1,5 @@
 import { Pressable, View, type StyleProp, type ViewStyle } from 'react-native';
+import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { radius, stroke, touch } from '../theme/tokens';
 import { web, type WebKeyEvent } from '../theme/web-props';
@@ -69,19 +70,18 @@ export function SegmentSwitch<V extends string>({
   );
 }
 
-const useStyles = makeStyles(({ colors }) => ({
+const useStyles = makeStyles((theme) => ({
   group: {
     flexDirection: 'row',
     minHeight: touch.min,
     borderRadius: radius.control,
-    borderWidth: stroke.control,
-    borderColor: colors.edge,
+    ...innerFrame(theme, stroke.control, theme.colors.edge),
     overflow: 'hidden',
   },
-  segment: { minHeight: touch.min - 2 * stroke.control, alignItems: 'center', justifyContent: 'center' },
+  segment: { minHeight: touch.min, alignItems: 'center', justifyContent: 'center' },
   even: { flexGrow: 1, flexShrink: 1, flexBasis: 0 },
   words: { flexGrow: 1, flexShrink: 1, paddingHorizontal: 12 },
-  pressed: { backgroundColor: colors.well },
-  on: { backgroundColor: colors.ink },
+  pressed: { backgroundColor: theme.colors.well },
+  on: { backgroundColor: theme.colors.ink },
   word: { fontSize: 15, lineHeight: 20 },
 }));

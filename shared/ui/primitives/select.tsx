@@ -1,6 +1,7 @@
 import { useId, useImperativeHandle, useRef, useState, type Ref } from 'react';
 import { View } from 'react-native';
 import { Icon } from '../icons/icon';
+import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
 import { domElement } from './dom-element';
@@ -95,18 +96,17 @@ export function Select<V extends string>({
   );
 }
 
-const useStyles = makeStyles(({ colors }) => ({
+const useStyles = makeStyles((theme) => ({
   box: {
     borderRadius: radius.control,
-    borderWidth: stroke.control,
-    borderColor: colors.edge,
-    backgroundColor: colors.sheet,
+    backgroundColor: theme.colors.sheet,
+    ...innerFrame(theme, stroke.control, theme.colors.edge),
     justifyContent: 'center',
     overflow: 'hidden',
   },
-  focused: { borderWidth: stroke.focus, borderColor: colors.focus },
-  bad: { borderWidth: stroke.chosen, borderColor: colors.alarm },
-  off: { backgroundColor: colors.well, borderColor: colors.well },
+  focused: innerFrame(theme, stroke.focus, theme.colors.focus),
+  bad: innerFrame(theme, stroke.chosen, theme.colors.alarm),
+  off: { backgroundColor: theme.colors.well, boxShadow: 'none' },
   select: {
     appearance: 'none',
     WebkitAppearance: 'none',
@@ -119,13 +119,13 @@ const useStyles = makeStyles(({ colors }) => ({
     bottom: 0,
     left: 0,
     width: '100%',
-    paddingLeft: 12.5,
+    paddingLeft: 14,
     paddingRight: 44,
-    color: colors.ink,
+    color: theme.colors.ink,
     fontFamily: faceStacks.text,
     fontSize: typeScale.body.size,
     fontVariant: ['tabular-nums'],
   } as object,
-  empty: { color: colors.ink2 },
+  empty: { color: theme.colors.ink2 },
   mark: { position: 'absolute', right: 14, pointerEvents: 'none' },
 }));

@@ -6,16 +6,16 @@ const sheetId = 'bw-page';
 
 /**
  * What React Native styles cannot say: the focus ring of everything that takes the keyboard, tabular numerals in
- * drawings, the system's colours by name. `:where` keeps it weaker than any style of a component.
+ * drawings, the system's colours by name. Where the system forces its colours the theme already speaks in them, so
+ * that the browser need not repaint. `:where` keeps it weaker than any style of a component.
  */
 const rules = `
-:root{--bw-canvas:Canvas;--bw-canvas-text:CanvasText;--bw-highlight:Highlight}
+:root{--bw-canvas:Canvas;--bw-canvas-text:CanvasText;--bw-highlight:Highlight;--bw-gray:GrayText}
 html{font-variant-numeric:tabular-nums;font-family:${faceStacks.text};-webkit-text-size-adjust:100%;text-size-adjust:100%}
 :where(:focus-visible){outline:3px solid var(--bw-focus);outline-offset:-3px}
 :where([data-focus="none"]):focus-visible,:where(input,select,textarea):focus-visible{outline:none}
-:where([data-underline]){text-decoration:underline;text-underline-offset:3px;text-decoration-thickness:1px}
 :where([data-press]){transition:background-color ${motion.press}ms ${motion.ease},border-color ${motion.press}ms ${motion.ease}}
-@media (forced-colors:active){[aria-checked="true"],[aria-selected="true"]{forced-color-adjust:none}:where(input,select,textarea):focus-visible{outline:3px solid Highlight}}
+@media (forced-colors:active){*{forced-color-adjust:none}}
 @media (prefers-reduced-motion:reduce){*,*::before,*::after{transition-duration:0ms!important;animation-duration:0ms!important}}
 `;
 
