@@ -22,3 +22,19 @@ export const returnTo = {
     return path;
   },
 };
+
+/** Why one has to sign in again, in a sentence. */
+export const endedSentence = (reason: EndedReason): string =>
+  ({
+    expired: 'Your session has ended. Sign in again; what you typed is kept.',
+    disabled: 'A manager has switched this access off. Ask a manager of your workshop.',
+    'sign-out': 'You were signed out from another device. What you typed is kept.',
+    'role-changed': 'Your role was changed. Sign in again; what you typed is kept.',
+    revoked: 'This access was taken back. Ask a manager of your workshop.',
+  })[reason];
+
+/** The address last typed on this device, so that signing in again needs the password only. */
+export const lastEmail = {
+  get: (): string => recall('email') ?? '',
+  set: (email: string): void => remember('email', email),
+};

@@ -12,7 +12,7 @@ import { isProblem } from './api-problem';
 import { forgetDrafts } from './draft-store';
 import { queryClient } from './query-client';
 import { roots } from './query-keys';
-import { endedStore, signedInBefore, rememberSignedIn } from './session-state';
+import { endedStore, rememberSignedIn, returnTo, signedInBefore, type EndedReason } from './session-state';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
@@ -26,6 +26,8 @@ export const sessionQuery = () =>
       if (!session) rememberSignedIn(false);
       return session;
     },
+    // Known without asking: the first screen of a visitor waits for nothing.
+    initialData: (): SessionDto | null | undefined => (signedInBefore() ? undefined : null),
     staleTime: staleTimes.session,
     gcTime: Infinity,
   });
@@ -126,8 +128,9 @@ export const useChangeMe = () =>
   });
 
 /** The session has ended without anybody's doing here: nothing typed is lost, the shell asks to sign in again. */
-export function sessionLost(reason: 'expired' | 'disabled' | 'sign-out' | 'role-changed' | 'revoked'): void {
+export function sessionLost(reason: EndedReason): void {
   if (!queryClient.getQueryData(sessionQuery().queryKey)) return;
+  returnTo.keep(location.pathname + location.search);
   rememberSignedIn(false);
   endedStore.set(reason);
   queryClient.setQueryData(sessionQuery().queryKey, null);
