@@ -22,3 +22,4 @@ export { inverseNormal } from './statistics/inverse-normal';
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
 export { judgeCheck } from './plan/judge-check';
+export { quickEstimate, type QuickEstimate, type QuickNumbers, type QuickWay } from './plan/estimate';

@@ -58,7 +58,8 @@ export interface QuickEstimate {
 /** What nobody is asked for here. Guesses of the trade, and the tolerance that workshops begin with. */
 const TOLERANCE_VOLTS = 0.005;
 const ROOM_CELSIUS = 20;
-const LEAD_OHM = 0.005;
+/** Short leads with good clips, there and back. */
+const LEAD_OHM = 0.002;
 const HANDS_S = 300;
 const BUSBARS_S = 720;
 const REST_S = 3600;
@@ -84,11 +85,12 @@ export function quickEstimate(numbers: QuickNumbers): QuickEstimate {
     direction: plan.direction,
     overAndSettle,
     onTheMark,
-    refusals: plan.refusals,
-    cautions: withoutTwins([
+    // All groups are alike here, so what one is refused for stands for all.
+    refusals: firstOfEach(plan.refusals),
+    cautions: firstOfEach([
       ...plan.cautions,
       ...plan.options.flatMap(({ way, cautions }) => (way === 'terminals' ? cautions : [])),
-    ]),
+    ]).filter(({ code }) => code !== 'thin-leads'),
     ruledOut: plan.alreadyWithin
       ? ['The spare rests within 5\u00a0mV of the target already. Nothing is to be charged.']
       : [...new Set(reasons)],
@@ -106,8 +108,8 @@ const quickWay = (option: PlanOption): QuickWay => ({
   narrowsByS: option.narrowsByS,
 });
 
-const withoutTwins = (cautions: Caution[]): Caution[] =>
-  cautions.filter(({ text }, index) => cautions.findIndex((other) => other.text === text) === index);
+const firstOfEach = <Said extends { code: string }>(said: Said[]): Said[] =>
+  said.filter(({ code }, index) => said.findIndex((other) => other.code === code) === index);
 
 /** The planner's input that stands behind a quick estimate. */
 function quickPlanInput(numbers: QuickNumbers): PlanInput {
@@ -156,7 +158,7 @@ function quickPlanInput(numbers: QuickNumbers): PlanInput {
         adjustableVolts: true,
         senses: 'own-terminals',
         leadResistanceOhm: LEAD_OHM,
-        displayStepVolts: 0.01,
+        displayStepVolts: 0.001,
         singleGroup: false,
         canDischarge: true,
         dischargeAmps: amps,

@@ -21,7 +21,7 @@ const CLIP_ON_S = 300;
 const CLIP_OFF_S = 300;
 const CHECK_S = 300;
 /** Busbars off, or on again. */
-const BUSBARS_S = 1200;
+const BUSBARS_S = 720;
 
 /** A reading's temperature says how warm the module is for this long, s: it follows the room within half a day. A guess. */
 const TEMPERATURE_GOOD_S = 12 * 3600;

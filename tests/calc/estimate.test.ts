@@ -40,9 +40,9 @@ describe('the quick estimate', () => {
     },
   );
 
-  it('takes 3600 s · Ah / A of current at 20 A over and settle, within 0.1 %', () => {
+  it('takes 3600 s · Ah / A of current at 20 A over and settle, within 1 %', () => {
     const way = quickEstimate(numbers()).overAndSettle!;
-    expect(secondsOf(way.segments, 'cc', 'taper') / ((3600 * way.ampHours) / 20)).toBeCloseTo(1, 3);
+    expect(secondsOf(way.segments, 'cc', 'taper') / ((3600 * way.ampHours) / 20)).toBeCloseTo(1, 2);
   });
 
   it.each([3.64, 3.72, 3.8])(
@@ -61,7 +61,7 @@ describe('the quick estimate', () => {
 
   it('rests an hour and ends with the check, and its band encloses the likely time', () => {
     for (const way of [quickEstimate(numbers()).overAndSettle!, quickEstimate(numbers()).onTheMark!]) {
-      expect(secondsOf(way.segments, 'rest')).toBe(3600);
+      expect(secondsOf(way.segments, 'rest')).toBeCloseTo(3600, 6);
       expect(way.segments.at(-1)?.kind).toBe('check');
       expect(way.totalS.p10).toBeLessThan(way.totalS.p50);
       expect(way.totalS.p50).toBeLessThan(way.totalS.p90);
