@@ -2,6 +2,7 @@ const { getDefaultConfig } = require('expo/metro-config');
 const { createHash } = require('node:crypto');
 const fs = require('node:fs');
 const path = require('node:path');
+const { leaveOut } = require('./server/cli/web/leave-out.cjs');
 const { leanZod } = require('./server/cli/web/lean-zod.cjs');
 const { splitChunks } = require('./server/cli/web/split-chunks.cjs');
 
@@ -28,7 +29,8 @@ if (process.env.NODE_ENV === 'production') {
   config.resolver.resolveRequest = (context, moduleName, platform) => {
     const filePath = lean.get(moduleName);
     if (filePath) return { type: 'sourceFile', filePath };
-    return (resolveFurther ?? context.resolveRequest)(context, moduleName, platform);
+    const found = (resolveFurther ?? context.resolveRequest)(context, moduleName, platform);
+    return (found.type === 'sourceFile' && leaveOut(context.originModulePath, found.filePath)) || found;
   };
 }
 
