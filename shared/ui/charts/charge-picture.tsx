@@ -6,7 +6,6 @@ import { useHalo } from '../theme/surface';
 import { useTheme } from '../theme/theme';
 import { faceStacks } from '../theme/tokens';
 import type { Tick } from '../wait-ribbon/ticks';
-import { tickAnchor } from '../wait-ribbon/time-axis';
 import { layoutPicture, type GridLine, type PictureInput } from './charge-picture-layout';
 
 export interface ChargePictureProps extends Omit<PictureInput, 'voltsHeight' | 'ampsHeight'> {
@@ -17,6 +16,9 @@ export interface ChargePictureProps extends Omit<PictureInput, 'voltsHeight' | '
   /** The picture in one sentence; the values are in the table beside it (`PictureTable`). */
   twin: string;
 }
+
+/** The outline of the alarm's octagon, to cut it free from the lines under it. */
+const octagon = 'M7.6 1.5h8.8l6.1 6.1v8.8l-6.1 6.1H7.6l-6.1-6.1V7.6z';
 
 /** Volts and amps of a charge on one time axis. Solid at the clips, dashed rest voltage, tint the band. */
 export function ChargePicture({ ticks, twin, voltsHeight = 150, ampsHeight = 66, ...input }: ChargePictureProps) {
@@ -53,7 +55,8 @@ export function ChargePicture({ ticks, twin, voltsHeight = 150, ampsHeight = 66,
       {drawing.dots.map(({ x, y, odd }) =>
         odd ? (
           <G key={`${x} ${y}`} transform={`translate(${x - 7} ${y - 7}) scale(${14 / 24})`}>
-            <Path d={stageGlyphs.overdue.d} fill={colors.alarm} fillRule="evenodd" stroke={halo} strokeWidth={2} />
+            <Path d={octagon} fill={halo} stroke={halo} strokeWidth={4} />
+            <Path d={stageGlyphs.overdue.d} fill={colors.alarm} fillRule="evenodd" />
           </G>
         ) : (
           <Circle key={`${x} ${y}`} cx={x} cy={y} r={3.5} fill={colors.ink} stroke={halo} strokeWidth={1} />
@@ -67,7 +70,7 @@ export function ChargePicture({ ticks, twin, voltsHeight = 150, ampsHeight = 66,
             <SvgText
               x={x}
               y={baseY + 18}
-              textAnchor={x > width - 14 ? tickAnchor(x, width, true) : 'middle'}
+              textAnchor={x > width - 14 ? 'end' : 'middle'}
               fill={colors.ink2}
               fontFamily={faceStacks.text}
               fontSize={13}

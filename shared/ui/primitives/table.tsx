@@ -235,8 +235,12 @@ const useStyles = makeStyles(({ colors }) => ({
   cell: { justifyContent: 'center', paddingVertical: 3 },
   right: { alignItems: 'flex-end' },
   pressed: { backgroundColor: colors.well },
-  sheet: { backgroundColor: colors.sheet },
-  alarmTint: { backgroundColor: colors.alarmTint },
+  // The ground of a row that stands out reaches 12 px over the text on both sides.
+  sheet: { backgroundColor: colors.sheet, boxShadow: `-12px 0 0 ${colors.sheet}, 12px 0 0 ${colors.sheet}` },
+  alarmTint: {
+    backgroundColor: colors.alarmTint,
+    boxShadow: `-12px 0 0 ${colors.alarmTint}, 12px 0 0 ${colors.alarmTint}`,
+  },
   group: { paddingTop: 9, paddingBottom: 4, borderTopWidth: 1, borderTopColor: colors.line },
   groupAfter: { borderTopWidth: 1.5, borderTopColor: colors.edge },
   phoneRow: {

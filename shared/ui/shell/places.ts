@@ -1,0 +1,72 @@
+/** Where one can go: the bottom bar of the phone, the rail of tablet and desk. */
+import type { NavItem } from '../screen/nav-items';
+
+export interface Place {
+  /** Key in the bottom bar; null inside a task, whose foot replaces the bar. */
+  tab: 'bench' | 'spares' | 'alerts' | 'more' | null;
+  rail: 'bench' | 'spares' | 'alerts' | 'waits' | 'workshop' | 'more';
+}
+
+/** Screens that show the bottom bar. Everything else is a task with Back at its head and its next step at its foot. */
+const tabs: Readonly<Record<string, Place['tab']>> = {
+  '/bench': 'bench',
+  '/spares': 'spares',
+  '/alerts': 'alerts',
+  '/more': 'more',
+  '/waits': 'more',
+  '/workshop': 'more',
+};
+
+/** Which place of bar and rail an address belongs to. */
+export function placeOf(path: string): Place {
+  const bare = path.replace(/\/+$/, '') || '/';
+  const first = bare.split('/')[1] ?? '';
+  const rail = (['spares', 'alerts', 'waits', 'workshop', 'more'] as const).find((key) => key === first) ?? 'bench';
+  return { tab: tabs[bare] ?? null, rail };
+}
+
+const bench: NavItem = { key: 'bench', title: 'Bench', icon: 'bench', href: '/bench' };
+const spares: NavItem = { key: 'spares', title: 'Spares', icon: 'spares', href: '/spares' };
+const alertsWith = (count: number): NavItem => ({
+  key: 'alerts',
+  title: 'Alerts',
+  icon: 'alerts',
+  href: '/alerts',
+  count,
+});
+
+/** The phone's places. */
+export const tabItems = ({ alerts }: { alerts: number }): NavItem[] => [
+  bench,
+  spares,
+  alertsWith(alerts),
+  { key: 'more', title: 'More', icon: 'more', href: '/more' },
+];
+
+/** The places of tablet and desk; the waits only for those who may read them. */
+export const railItems = ({ alerts, seesWaits }: { alerts: number; seesWaits: boolean }): NavItem[] => [
+  bench,
+  spares,
+  alertsWith(alerts),
+  ...(seesWaits ? ([{ key: 'waits', title: 'Waits', icon: 'waits', href: '/waits' }] satisfies NavItem[]) : []),
+  { key: 'workshop', title: 'Workshop', icon: 'workshop', href: '/workshop' },
+];
+
+/** Titles of the browser's tab, by route. */
+export const titles: Readonly<Record<string, string>> = {
+  bench: 'Bench',
+  plan: 'Plan a charge',
+  more: 'More',
+  alerts: 'Alerts',
+  waits: 'Waits',
+  'spares/index': 'Spares',
+  'spares/new': 'New spare',
+  'spares/[id]': 'Spare',
+  'spares/[id]/index': 'Spare',
+  'workshop/index': 'Workshop',
+  'charges/[id]/index': 'Charge',
+  'charges/[id]/checks': 'Before clipping on',
+  'charges/[id]/log': 'Log a reading',
+  'charges/[id]/check': 'Check after rest',
+  'charges/[id]/label': 'Label',
+};
