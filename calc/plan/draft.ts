@@ -9,6 +9,8 @@ export interface DraftStep {
   channel: ChannelParameters | null;
   resistorId: string | null;
   groupIndexes: number[];
+  /** Begins together with the step before it, on a channel of its own. */
+  together: boolean;
   direction: Direction;
   setVolts: number | null;
   setAmps: number | null;

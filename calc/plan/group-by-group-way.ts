@@ -8,93 +8,113 @@ import { groupsText } from './words';
 const LEAVE_SHARE = 1 / 3;
 
 /**
- * Each group by itself, on one channel or on several at once: longest first, each to the channel that is then done soonest.
+ * Each group by itself, on one channel or on several at once.
  *
- * A group whose direction no channel has is left as it is: the draft then ends apart, or is not possible where that is all
- * of them.
+ * Several channels begin together and are swapped together, longest groups first, so that those of one round end near each
+ * other; as many of the channels are used, quickest first, as has the last current end soonest. A group that no channel can
+ * move is left as it is: the draft then ends apart, or is not possible where that is all of them.
  */
 export function groupByGroupWay(model: PlanModel, channels: ChannelParameters[], finish: Finish): Draft | NotPossible {
-  const names = channels.map((channel) => channel.name).join(' and ');
   if (model.groups.length === 1) return { reason: 'This module has one group: its terminals are the group.' };
   const blind = channels.find((channel) => !takesOneGroup(channel));
   if (blind) return { reason: `${blind.name} cannot be set as low as one group.` };
   const tasks = groupTasks(model, model.startSoc, model.toleranceVolts * LEAVE_SHARE);
-  const state: ModuleState = {
-    soc: model.startSoc,
-    polarisation: model.startSoc.map(() => 0),
-    movedIn: () => 0,
-  };
-  const done = assign(model, channels, finish, tasks, state);
-  if (done.steps.length === 0) return { reason: done.reason ?? `${names} has nothing to move.` };
-  const left = done.left;
+  const stepsBy = stepMaker(model, finish);
+  const quickest = [...channels].sort((a, b) => b.maxAmps - a.maxAmps || a.channelId.localeCompare(b.channelId));
+  let best: Rounds | null = null;
+  for (let count = 1; count <= quickest.length; count += 1) {
+    const rounds = inRounds(model, quickest.slice(0, count), tasks, stepsBy);
+    if (
+      best === null ||
+      rounds.left.length < best.left.length ||
+      (rounds.left.length === best.left.length && rounds.endS < best.endS)
+    )
+      best = rounds;
+  }
+  if (best === null || best.steps.length === 0)
+    return { reason: best?.reason ?? `${channels.map((channel) => channel.name).join(' and ')} has nothing to move.` };
+  return toDraft(model, best, finish);
+}
+
+function toDraft(model: PlanModel, { steps, left }: Rounds, finish: Finish): Draft {
+  const names = [...new Set(steps.map((step) => step.channel!.name))].join(' and ');
   const outside = groupTasks(model, model.startSoc, model.toleranceVolts + 1e-5).filter((task) =>
     left.includes(task.group),
   );
-  const firstStep = done.steps[0]!;
+  const one = outside.length === 1;
   return {
     way: 'group-by-group',
     finish,
     direction: model.direction,
-    steps: done.steps,
-    setVolts: firstStep.setVolts,
-    setVoltsCap: firstStep.capVolts,
-    amps: Math.max(...done.steps.map((step) => step.setAmps ?? Math.abs(step.endAmps))),
+    steps,
+    setVolts: steps[0]!.setVolts,
+    setVoltsCap: steps[0]!.capVolts,
+    amps: Math.max(...steps.map((step) => step.setAmps ?? Math.abs(step.endAmps))),
     busbarsOff: false,
-    takes: `Leads on one group after the other${channels.length > 1 ? `, ${names} at once` : ''}. Busbars stay.`,
+    takes: `Leads on one group after the other${names.includes(' and ') ? `, ${names} at once` : ''}. Busbars stay.`,
     cautions:
       outside.length === 0
         ? []
         : [
             {
               code: 'ends-apart',
-              text: `${groupsText(outside.map((task) => task.group))} cannot be brought in with ${names} and ${outside.length === 1 ? 'ends' : 'end'} outside the tolerance.`,
+              text: `${groupsText(outside.map((task) => task.group))} cannot be brought in with ${names} and ${one ? 'ends' : 'end'} outside the tolerance.`,
             },
           ],
   };
 }
 
-function assign(
-  model: PlanModel,
-  channels: ChannelParameters[],
-  finish: Finish,
-  tasks: GroupTask[],
-  state: ModuleState,
-): { steps: DraftStep[]; left: number[]; reason: string | null } {
-  const soc = [...state.soc];
-  const stepFor = (task: GroupTask, channel: ChannelParameters): DraftStep | NotPossible =>
-    singleGroupStep(model, 'bulk', channel, finish, task, { ...state, soc });
+type StepMaker = (task: GroupTask, channel: ChannelParameters) => DraftStep | NotPossible;
+
+/** Steps by group and channel, each run once. */
+function stepMaker(model: PlanModel, finish: Finish): StepMaker {
+  const state: ModuleState = { soc: model.startSoc, polarisation: model.startSoc.map(() => 0), movedIn: () => 0 };
+  const made = new Map<string, DraftStep | NotPossible>();
+  return (task, channel) => {
+    const key = `${task.group}/${channel.channelId}`;
+    const known = made.get(key) ?? singleGroupStep(model, 'bulk', channel, finish, task, state);
+    made.set(key, known);
+    return known;
+  };
+}
+
+interface Rounds {
+  steps: DraftStep[];
+  left: number[];
+  reason: string | null;
+  /** Last current, s from now. */
+  endS: number;
+}
+
+function inRounds(model: PlanModel, channels: ChannelParameters[], tasks: GroupTask[], stepBy: StepMaker): Rounds {
   const { clipOnS, clipOffS } = model.input.workshop;
-  const freeS = channels.map((channel) => Math.max(channel.freeInS, model.input.clipOnAtS));
-  const steps: DraftStep[] = [];
-  const left: number[] = [];
-  let reason: string | null = null;
-  for (const task of [...tasks].sort((a, b) => b.ampHours - a.ampHours || a.group - b.group)) {
-    let best: { step: DraftStep; channel: number; doneS: number } | null = null;
-    channels.forEach((channel, at) => {
-      const step = stepFor(task, channel);
-      if (!isStep(step)) {
-        reason ??= step.reason;
-        return;
-      }
-      const doneS = freeS[at]! + clipOnS + clipOffS + step.seconds;
-      if (best === null || doneS < best.doneS) best = { step, channel: at, doneS };
-    });
-    // TypeScript does not see the assignment inside forEach.
-    const found = best as { step: DraftStep; channel: number; doneS: number } | null;
-    if (found === null) {
-      left.push(task.group);
-      continue;
+  const waiting = [...tasks].sort((a, b) => b.ampHours - a.ampHours || a.group - b.group);
+  const rounds: Rounds = {
+    steps: [],
+    left: [],
+    reason: null,
+    endS: Math.max(model.input.clipOnAtS, ...channels.map((channel) => channel.freeInS)),
+  };
+  const soc = [...model.startSoc];
+  while (waiting.length > 0) {
+    const round: DraftStep[] = [];
+    for (const channel of channels) {
+      const at = waiting.findIndex((task) => isStep(stepBy(task, channel)));
+      if (at < 0) continue;
+      const [task] = waiting.splice(at, 1);
+      round.push(stepBy(task!, channel) as DraftStep);
     }
-    freeS[found.channel] = found.doneS;
-    soc[task.group] = found.step.socAfter[task.group]!;
-    steps.push(found.step);
+    if (round.length === 0) break;
+    round.forEach((step, place) => {
+      soc[step.groupIndexes[0]!] = step.socAfter[step.groupIndexes[0]!]!;
+      rounds.steps.push({ ...step, together: place > 0, socAfter: [...soc] });
+    });
+    rounds.endS += round.length * (clipOnS + clipOffS) + Math.max(...round.map((step) => step.seconds));
   }
-  // Every step knows the whole module's state; in lanes side by side that is only so once all before it are done.
-  let after = [...model.startSoc];
-  const ordered = steps.map((step) => {
-    after = [...after];
-    after[step.groupIndexes[0]!] = step.socAfter[step.groupIndexes[0]!]!;
-    return { ...step, socAfter: after };
-  });
-  return { steps: ordered, left, reason };
+  for (const task of waiting) {
+    rounds.left.push(task.group);
+    const tried = stepBy(task, channels[0]!);
+    if (!isStep(tried)) rounds.reason ??= tried.reason;
+  }
+  return rounds;
 }

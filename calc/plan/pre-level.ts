@@ -102,6 +102,7 @@ function levelOne(
     channel: null,
     resistorId: resistor.resistorId,
     groupIndexes: [group],
+    together: false,
     direction: up ? 'charge' : 'discharge',
     setVolts: null,
     setAmps: null,

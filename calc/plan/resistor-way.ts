@@ -74,6 +74,7 @@ export function resistorWay(
     channel: null,
     resistorId: resistor.resistorId,
     groupIndexes: all,
+    together: false,
     direction,
     setVolts: null,
     setAmps: null,

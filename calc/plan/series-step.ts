@@ -118,6 +118,7 @@ function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: S
     channel: input.channel,
     resistorId: null,
     groupIndexes,
+    together: false,
     direction,
     setVolts: settings.setVolts,
     setAmps: settings.setAmps,
