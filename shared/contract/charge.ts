@@ -1,7 +1,8 @@
 import * as z from 'zod/mini';
 import { id, instant, optionalText, reason, type Instant, type PersonRef } from './common';
 import type { CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
-import { groupVolts, groupVoltsList, optionalQuantity } from './quantity';
+import { typedGroupVolts } from './group-volts';
+import { groupVolts, optionalQuantity } from './quantity';
 
 export const stages = [
   'planned',
@@ -70,7 +71,7 @@ const readingShape = {
   terminalVolts: optionalQuantity({ name: 'Volts', unit: 'V', min: 0, max: 150 }),
   amps: optionalQuantity({ name: 'Amps', unit: 'A', min: -2000, max: 2000 }),
   celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 120 }),
-  groupVolts: z.optional(z.nullable(groupVoltsList)),
+  groupVolts: z.optional(z.nullable(typedGroupVolts)),
   meterId: z.optional(z.nullable(id)),
 };
 /** At least one number; which of them is up to what can be read. */
@@ -88,7 +89,7 @@ export type ReadingInput = z.infer<typeof readingSchema>;
 export const correctReadingSchema = z.object({ ...readingShape, reason: z.optional(optionalText('The reason', 300)) });
 
 export const restCheckSchema = z.object({
-  groupVolts: groupVoltsList,
+  groupVolts: typedGroupVolts,
   celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 90 }),
   meterId: z.nullable(id),
   at: atNow,

@@ -1,0 +1,52 @@
+import type { EntityManager } from 'typeorm';
+import type { BoardDto } from '@/shared/contract/board';
+import type { ChargeCardDto } from '@/shared/contract/charge';
+import type { Deps } from '../deps';
+import { listBenchCharges } from '../repositories/charges.repository';
+import { listOpenHolds } from '../repositories/open-holds.repository';
+import { listUsableChannels } from '../repositories/chargers.repository';
+import { benchOrder, onTheWall, wallOrder } from './board-order';
+import { chargeCard } from './charge-dto';
+import { STOPPED_ON_BOARD_MS } from './charge-due';
+import { loadBench, loadFiles } from './charge-file';
+import { titleOf } from './charge-words';
+import { toInstant } from './instants';
+import { openingOf } from './working-hours';
+
+/** The bench as the people of a workshop see it: all open charges, in the order in which they want a hand. */
+export async function benchBoard(deps: Deps, workshopId: string, now: number): Promise<BoardDto> {
+  const board = await boardOf(deps.dataSource.manager, workshopId, now);
+  return { ...board, charges: benchOrder(board.charges, now) };
+}
+
+/** The board as a wall shows it: without what is only planned or has long been ready, soonest first. */
+export async function wallBoard(deps: Deps, workshopId: string, now: number): Promise<BoardDto> {
+  const board = await boardOf(deps.dataSource.manager, workshopId, now);
+  return { ...board, charges: wallOrder(board.charges.filter((card) => onTheWall(card, now))) };
+}
+
+async function boardOf(manager: EntityManager, workshopId: string, now: number): Promise<BoardDto> {
+  const bench = await loadBench(manager, workshopId);
+  const rows = await listBenchCharges(manager, workshopId, now - STOPPED_ON_BOARD_MS);
+  const files = await loadFiles(manager, workshopId, rows, bench);
+  const cards: ChargeCardDto[] = files.map((file) => chargeCard(file, now));
+  const running = new Map(
+    (await listOpenHolds(manager, workshopId))
+      .filter(({ hold }) => hold.state === 'running')
+      .map(({ hold, charge }) => [hold.channelId, titleOf(charge)]),
+  );
+  const opening = openingOf(bench.workshop, now);
+  return {
+    rev: bench.workshop.boardRev,
+    at: toInstant(now),
+    workshop: { id: workshopId, name: bench.workshop.name, zone: bench.workshop.zone },
+    charges: cards,
+    channels: (await listUsableChannels(manager, workshopId)).map(({ channel }) => ({
+      id: channel.id,
+      name: channel.name,
+      maxAmps: channel.maxAmps,
+      chargeTitle: running.get(channel.id) ?? null,
+    })),
+    openToday: opening === null ? null : { from: toInstant(opening.from), to: toInstant(opening.to) },
+  };
+}

@@ -1,0 +1,151 @@
+/** What each alert says: what was seen, then what to check first (look: §1, §8). */
+import type { ChargeFile } from './charge-file';
+import { isChecked, promisedAt } from './charge-due';
+import { restedS } from './charge-progress';
+import { isRunning, type SwapWait } from './charge-stages';
+import { handText, stepsOfSwap } from './charge-steps';
+import {
+  ampHoursText,
+  ampsText,
+  cellText,
+  channelNamesOf,
+  clockText,
+  durationText,
+  listText,
+  millivoltsText,
+  plainAmpsText,
+  titleAtChannel,
+  titleOf,
+} from './charge-words';
+
+export interface AlertText {
+  title: string;
+  seen: string;
+  checkFirst: string;
+}
+
+const lastStep = (file: ChargeFile): number => file.charge.option.steps.length - 1;
+const presentStep = (file: ChargeFile): number => file.charge.reckoning?.reckoning.stepIndex ?? 0;
+const channelsOfLast = (file: ChargeFile): string => {
+  const { option } = file.charge;
+  const starts = stepsOfSwap(option, lastStep(file));
+  return listText([...new Set(starts.flatMap((index) => channelNamesOf(file, index)))]);
+};
+
+/** The end of current: over and settle does not end by itself, on the mark has all but ended. */
+export function chargeDoneText(file: ChargeFile, now: number): AlertText {
+  const { charge, workshop } = file;
+  const delivered = ampHoursText(Math.abs(charge.reckoning?.reckoning.deliveredAh ?? 0));
+  const channels = channelsOfLast(file);
+  const direction = charge.direction === 'discharge' ? 'out' : 'in';
+  const due = charge.checkDueAt === null ? '' : `, check due ${clockText(charge.checkDueAt, workshop.zone, now)}`;
+  const off = channels === '' ? 'Take the resistor off' : `Switch ${channels} off`;
+  if (charge.finish === 'over-and-settle')
+    return {
+      title: titleAtChannel(file, lastStep(file)),
+      seen: `${off}: ${delivered} are ${direction}. It does not stop by itself.`,
+      checkFirst: `That ${channels === '' ? 'the resistor' : channels} is off, then say when. It rests from then on${due}.`,
+    };
+  return {
+    title: titleAtChannel(file, lastStep(file)),
+    seen: `${delivered} are ${direction} and the current has tapered to the mark. Resting${due}.`,
+    checkFirst: `${off}, then say when.`,
+  };
+}
+
+export function checkDueText(file: ChargeFile): AlertText {
+  const { charge } = file;
+  const unsaid =
+    charge.currentOffSaid || charge.finish === 'on-the-mark'
+      ? ''
+      : ` Nobody has said that ${channelsOfLast(file) || 'the resistor'} is off: look at that before you measure.`;
+  return {
+    title: titleAtChannel(file, lastStep(file)),
+    seen: `Rested ${durationText(restedS(file))}.`,
+    checkFirst: `Each group with the meter, three decimals, against ${cellText(charge.frozen.target.volts)}.${unsaid}`,
+  };
+}
+
+export function stepSwapText(file: ChargeFile, wait: SwapWait): AlertText {
+  const { charge } = file;
+  const { reckoning } = charge.reckoning!;
+  return {
+    title: titleAtChannel(file, reckoning.stepIndex),
+    seen: `Step ${reckoning.stepIndex + 1} of ${charge.option.steps.length} has its charge. ${handText(file, wait.stepIndex)}.`,
+    checkFirst: swapCheck(file, wait),
+  };
+}
+
+function swapCheck(file: ChargeFile, wait: SwapWait): string {
+  const before = channelNamesOf(file, presentStep(file));
+  const step = file.charge.option.steps[wait.stepIndex]!;
+  const off = before.length === 0 ? 'That the resistor is off' : `That ${listText(before)} is off`;
+  const names = channelNamesOf(file, wait.stepIndex);
+  const volts = step.setVolts === null ? null : `${step.setVolts.toFixed(2)}\u00a0V`;
+  const amps = step.setAmps === null ? null : plainAmpsText(step.setAmps);
+  const set = [volts, amps].filter((part) => part !== null).join(', ');
+  const dial = names.length === 0 || set === '' ? '' : ` Then set ${listText(names)} to ${set}.`;
+  return `${off}, before a clip is moved.${dial}`;
+}
+
+export function lookInText(file: ChargeFile): AlertText {
+  const { charge } = file;
+  const reckoning = charge.reckoning?.reckoning;
+  const step = charge.option.steps[presentStep(file)];
+  const stands =
+    reckoning && isRunning(charge.stage)
+      ? `${ampsText(Math.abs(reckoning.amps))} and ${reckoning.terminalVolts.toFixed(2)}\u00a0V are expected`
+      : 'It rests, nothing flows';
+  return {
+    title: `Look in at ${titleAtChannel(file, presentStep(file))}`,
+    seen: `A look-in is due. ${stands}.`,
+    checkFirst:
+      step?.way === 'paralleled'
+        ? 'Warmth, smell, the joined links and the clips, then log what the charger shows.'
+        : 'Warmth, smell and the clips, then log what the charger shows.',
+  };
+}
+
+/** Late against the plan: what stands in its way, as far as the numbers know. */
+export function overdueText(file: ChargeFile, now: number): AlertText {
+  const { charge, workshop } = file;
+  const promised = `It was to be ready by ${clockText(promisedAt(file), workshop.zone, now)}.`;
+  if (charge.stage === 'queued') {
+    const names = listText(channelNamesOf(file, 0));
+    return {
+      title: titleAtChannel(file, 0),
+      seen: `${promised} It is not clipped on yet.`,
+      checkFirst: `${names === '' ? 'What it waits for' : `Whether ${names} is free`}, then clip on or stop waiting for it.`,
+    };
+  }
+  const title = titleAtChannel(file, presentStep(file));
+  if (charge.stage === 'check-due')
+    return isChecked(file)
+      ? {
+          title,
+          seen: `${promised} The check found it outside.`,
+          checkFirst: 'The top-up: plan it, or shelve the spare.',
+        }
+      : {
+          title,
+          seen: `Its check has waited since ${clockText(charge.checkDueAt ?? now, workshop.zone, now)}.`,
+          checkFirst: 'The group voltages: enter them, and it is known.',
+        };
+  const likely = charge.likelyAt === null ? '' : ` Now ${clockText(charge.likelyAt, workshop.zone, now)}.`;
+  const reckoning = charge.reckoning?.reckoning;
+  const lag =
+    reckoning && reckoning.laggingGroup !== null
+      ? ` Group ${reckoning.laggingGroup + 1} lags ${millivoltsText(reckoning.lagVolts)}.`
+      : '';
+  return { title, seen: `${promised}${likely}${lag}`, checkFirst: overdueCheck(file) };
+}
+
+function overdueCheck(file: ChargeFile): string {
+  const { charge } = file;
+  const lagging = charge.reckoning?.reckoning.laggingGroup ?? null;
+  const names = listText(channelNamesOf(file, presentStep(file)));
+  if (charge.stage === 'held') return `What ${titleOf(charge)} is held for, then resume or stop it.`;
+  if (charge.stage === 'resting') return 'Nothing at the clips: it rests. Tell who waits for it.';
+  const clips = lagging === null ? 'the clips' : `warmth at group ${lagging + 1}, then its clips`;
+  return `${clips.charAt(0).toUpperCase()}${clips.slice(1)}, then what ${names === '' ? 'the meter' : names} shows in amps. Log it.`;
+}

@@ -1,0 +1,211 @@
+import type { EntityManager } from 'typeorm';
+import { refuseCharge } from '@/calc/plan/refuse-charge';
+import type { Refusal } from '@/calc/plan-types';
+import { checkCodes, type CheckCode, type CheckItemDto } from '@/shared/contract/charge';
+import type { CheckAnswer } from '../entities/check-answer';
+import type { SpareReading } from '../entities/spare-reading';
+import { findLastSpareReading } from '../repositories/spares.repository';
+import { personRef } from './alert-dto';
+import {
+  attendanceWords,
+  ceilingWords,
+  conditionWords,
+  isolationWords,
+  locked,
+  polarityWords,
+  temperatureWords,
+  titleOfCheck,
+  ventilationWords,
+  type CheckWords,
+} from './charge-check-items';
+import type { ChargeFile } from './charge-file';
+import { isWaitingToStart } from './charge-stages';
+import { celsiusText, clockText } from './charge-words';
+import { toInstant } from './instants';
+import { spareState } from './plan-parameters';
+
+export interface CheckSheet {
+  items: CheckItemDto[];
+  /** What the numbers rule out now, each with its sentence. */
+  refusals: Refusal[];
+  /** The reading the locked answers come from. */
+  reading: SpareReading | null;
+}
+
+/** Which check shows what the numbers rule out. */
+const checkOfRefusal: Record<Refusal['code'], CheckCode> = {
+  'deep-discharged': 'condition',
+  condition: 'condition',
+  quarantined: 'condition',
+  reversed: 'polarity',
+  temperature: 'temperature',
+  ceiling: 'ceiling',
+  numbers: 'ceiling',
+  'target-over-limit': 'ceiling',
+  'target-under-limit': 'ceiling',
+};
+
+/**
+ * The checks of a charge as they stand. Before the start they are made anew from the spare's present state, so that what
+ * has changed since the plan counts; afterwards they show what was answered.
+ */
+export async function checkSheet(
+  manager: EntityManager,
+  file: ChargeFile,
+  answers: readonly CheckAnswer[],
+  now: number,
+): Promise<CheckSheet> {
+  const present = new Map(
+    answers.filter((answer) => answer.replacedAt === null).map((answer) => [answer.code, answer]),
+  );
+  const waiting = isWaitingToStart(file.charge.stage);
+  const reading = await findLastSpareReading(manager, file.charge.workshopId, file.charge.spareId);
+  const refusals = waiting && reading !== null ? presentRefusals(file, reading, now) : [];
+  const words = (code: CheckCode): CheckWords => {
+    const answer = present.get(code);
+    if (!waiting && code === 'temperature' && answer?.note)
+      return locked('data', code, answer.note, 'Answered from the reading before clipping on. Locked.');
+    const refusal = refusals.find((one) => checkOfRefusal[one.code] === code);
+    if (refusal && code !== 'temperature')
+      return locked('ruled-out', code, refusal.text, 'Ruled out by the numbers. Locked.');
+    return wordsOf(file, code, reading, waiting, now);
+  };
+  return {
+    items: checkCodes.map((code) => itemOf(file, code, words(code), present.get(code) ?? null)),
+    refusals,
+    reading,
+  };
+}
+
+function itemOf(file: ChargeFile, code: CheckCode, words: CheckWords, answer: CheckAnswer | null): CheckItemDto {
+  // The numbers answer for nobody, and a locked check has no answer to change.
+  const given = words.by === 'person' ? answer : null;
+  return {
+    code,
+    ...words,
+    answer: words.by === 'data' ? 'yes' : words.by === 'ruled-out' ? 'no' : (given?.answer ?? null),
+    answeredBy: personRef(file.people, given?.personId ?? null),
+    answeredAt: given === null ? null : toInstant(given.at),
+    note: given?.note ?? null,
+  };
+}
+
+/** What the spare's present state and its last reading rule out, with the limits the charge was planned with. */
+function presentRefusals(file: ChargeFile, reading: SpareReading, now: number): Refusal[] {
+  const { charge, spare, type, meters } = file;
+  const { frozen } = charge;
+  const state = spareState(spare, type, reading, meters.get(reading.meterId ?? '') ?? null, now);
+  const { minChargeCelsius: least, maxChargeCelsius: most } = frozen.module;
+  const found = refuseCharge({
+    module: frozen.module,
+    spare: state,
+    target: frozen.target,
+    channels: frozen.channels,
+    resistors: frozen.resistors,
+    neighbour: frozen.neighbour,
+    workshop: frozen.workshop,
+    readyByS: null,
+    clipOnAtS: 0,
+    // Nobody has read it lately: then a person answers, and the room's temperature rules nothing out.
+    celsius: (least + most) / 2,
+    seed: frozen.seed,
+  });
+  return [...found, ...ceilingRefusals(file)];
+}
+
+/** The channel as it is now against the cap: somebody may have changed the equipment since the plan. */
+function ceilingRefusals({ charge, channels }: ChargeFile): Refusal[] {
+  const { option } = charge;
+  const step = option.steps[0];
+  const cap = option.setVoltsCap;
+  return (step?.channelIds ?? []).flatMap((id): Refusal[] => {
+    const channel = channels.get(id);
+    if (!channel || channel.retired)
+      return [
+        {
+          code: 'ceiling',
+          group: null,
+          text: `${channel?.name ?? 'Its channel'} is out of use. Plan it again on another channel.`,
+        },
+      ];
+    if (step?.direction === 'charge' && cap !== null && !channel.adjustableVolts && channel.maxVolts > cap + 1e-6)
+      return [
+        {
+          code: 'ceiling',
+          group: null,
+          text: `${channel.name} gives ${channel.maxVolts.toFixed(2)}\u00a0V and cannot be set lower. ${cap.toFixed(2)}\u00a0V is the most that keeps a forgotten charge safe. Plan it on another channel.`,
+        },
+      ];
+    return [];
+  });
+}
+
+function wordsOf(
+  file: ChargeFile,
+  code: CheckCode,
+  reading: SpareReading | null,
+  waiting: boolean,
+  now: number,
+): CheckWords {
+  switch (code) {
+    case 'isolation':
+      return isolationWords();
+    case 'polarity':
+      return polarityWords(file);
+    case 'condition':
+      return conditionWords();
+    case 'temperature':
+      return temperatureOf(file, reading, waiting, now);
+    case 'ceiling':
+      return ceilingWords(file, file.channels.get(file.charge.option.steps[0]?.channelIds[0] ?? '') ?? null);
+    case 'ventilation':
+      return ventilationWords();
+    case 'attendance':
+      return attendanceWords(file, file.charge.startedAt ?? now);
+  }
+}
+
+function temperatureOf(file: ChargeFile, reading: SpareReading | null, waiting: boolean, now: number): CheckWords {
+  const { charge, workshop, spare, type, meters } = file;
+  const { minChargeCelsius: least, maxChargeCelsius: most } = charge.frozen.module;
+  const window = `${Math.round(least)}–${celsiusText(most)}`;
+  const celsius =
+    reading === null || !waiting
+      ? null
+      : spareState(spare, type, reading, meters.get(reading.meterId ?? '') ?? null, now).celsius;
+  if (celsius === null || reading === null) return temperatureWords(window);
+  const says = `${celsiusText(celsius)}, allowed ${window}`;
+  const at = clockText(reading.at, workshop.zone, now);
+  if (celsius < least || celsius > most) {
+    const wayOut = celsius < least ? `Warm it to ${celsiusText(least)}` : `Let it cool to ${celsiusText(most)}`;
+    return locked(
+      'ruled-out',
+      'temperature',
+      says,
+      `Ruled out by the reading at ${at}. Locked. ${wayOut}, then read it again.`,
+    );
+  }
+  return locked('data', 'temperature', says, `Answered from the reading at ${at}. Locked.`);
+}
+
+/** Sentence that keeps the timer from starting because of the checks; null: all of them let it start. */
+export function sheetBlock(sheet: CheckSheet): { code: 'ruled_out' | 'checks_open'; text: string } | null {
+  const out = sheet.items.find((item) => item.by === 'ruled-out');
+  if (out) {
+    const refusal = sheet.refusals.find((one) => checkOfRefusal[one.code] === out.code);
+    const why = refusal?.text ?? `${titleOfCheck(out.code)}: ${out.question}.`;
+    return { code: 'ruled_out', text: `${why} That cannot be ticked away.` };
+  }
+  const denied = sheet.items.find((item) => item.answer === 'no');
+  if (denied)
+    return {
+      code: 'ruled_out',
+      text: `${denied.title}: “${denied.no}”. Put it right, then change the answer.`,
+    };
+  const open = sheet.items.filter((item) => item.answer === null).length;
+  if (open === 0) return null;
+  return {
+    code: 'checks_open',
+    text: `${open} answer${open === 1 ? '' : 's'} still to come. What the readings rule out is locked.`,
+  };
+}

@@ -1,0 +1,195 @@
+/** The end of a charge: the check after the rest, fitting, the shelf, and whose it is. */
+import { judgeCheck } from '@/calc/index';
+import type { CheckVerdict } from '@/calc/plan-types';
+import type { ChargeDto, RestCheckInput } from '@/shared/contract/charge';
+import { groupVoltsProblems } from '@/shared/contract/group-volts';
+import { can } from '@/shared/contract/roles';
+import type { Deps, Member } from '../deps';
+import { forbidden, invalid, notFound } from '../errors/domain-error';
+import { alertsOfCharge, updateAlert } from '../repositories/alerts.repository';
+import { insertRestCheck } from '../repositories/charge-rows.repository';
+import { updateSpare } from '../repositories/charge-stock.repository';
+import { insertSpareReading } from '../repositories/spares.repository';
+import { announceStock } from './announce';
+import { actInstant } from './charge-instants';
+import { isOpen } from './charge-stages';
+import { wrongStage } from './charge-stage-conflict';
+import { markVisit } from './charge-visit';
+import { ampHoursText, bare, durationText, groupsText, millivoltsText } from './charge-words';
+import { changeCharge, type ChargeWrite } from './charge-write';
+import { newId } from './ids';
+import { correctedVolts } from './meter-trust';
+
+/**
+ * Judges the group voltages after the rest. In: ready. Out: the check stays due, with what each group needs.
+ *
+ * The known offset of the meter is taken off before the verdict. The voltages are kept with the spare too: a top-up is
+ * planned from them. A check before the rest is over counts, and the log says that it was early.
+ * @throws DomainError 409 where nothing rests, 400 with the sentence per voltage that cannot be
+ */
+export async function checkAfterRest(
+  deps: Deps,
+  member: Member,
+  id: string,
+  rev: number,
+  input: RestCheckInput,
+  now: number,
+): Promise<ChargeDto> {
+  const dto = await changeCharge(deps, member, id, rev, now, async (write) => {
+    const { manager, file } = write;
+    const { charge } = file;
+    if (charge.stage !== 'resting' && charge.stage !== 'check-due')
+      throw wrongStage(write, 'The check comes after the current has ended.');
+    const { module, target, spare } = charge.frozen;
+    const fields = groupVoltsProblems(input.groupVolts, module, 'groupVolts');
+    const meter = input.meterId === null ? null : (file.meters.get(input.meterId) ?? null);
+    if (input.meterId !== null && meter === null) fields.meterId = 'This meter is not on the list. Choose another.';
+    if (Object.keys(fields).length > 0) throw invalid(fields);
+    const at = actInstant(file, input.at, now, { at: charge.currentEndAt ?? now, name: 'the end of current' });
+    const verdict = judgeCheck(correctedVolts(input.groupVolts, meter), target, module, spare.capacityAh);
+    const row = {
+      groupVolts: input.groupVolts,
+      celsius: input.celsius,
+      meterId: input.meterId,
+      personId: member.personId,
+    };
+    const check = {
+      id: newId(),
+      workshopId: charge.workshopId,
+      chargeId: charge.id,
+      at,
+      ...row,
+      verdict,
+      createdAt: now,
+    };
+    await insertRestCheck(manager, check);
+    file.restChecks.push(check);
+    await insertSpareReading(manager, {
+      id: newId(),
+      workshopId: charge.workshopId,
+      spareId: charge.spareId,
+      at,
+      ...row,
+      note: `Check of ${charge.number}`,
+      createdAt: now,
+    });
+    await markVisit(write, at, null);
+    const early = charge.checkDueAt !== null && at < charge.checkDueAt ? earlyText(charge.checkDueAt - at) : '';
+    charge.checkedAt = at;
+    if (verdict.within) {
+      charge.stage = 'ready';
+      charge.readyAt = at;
+    }
+    write.note(verdict.within ? 'ready' : 'outside', `${verdictText(verdict)}${early}`, at);
+  });
+  announceStock(deps, member, now);
+  return dto;
+}
+
+const earlyText = (beforeMs: number): string =>
+  ` Checked early, ${durationText(beforeMs / 1000)} before the rest was over.`;
+
+function verdictText(verdict: CheckVerdict): string {
+  const worst = verdict.groups[verdict.worstGroup]!;
+  const side = worst.deviationVolts < 0 ? 'below' : 'above';
+  if (verdict.within)
+    return `Ready, in tolerance: group ${worst.group + 1} is farthest off, ${millivoltsText(worst.deviationVolts)} ${side}.`;
+  const outside = verdict.groups.filter((group) => !group.within);
+  if (outside.length === 1) {
+    const [one] = outside;
+    const away = one!.deviationVolts < 0 ? 'below' : 'above';
+    const needs = `${ampHoursText(Math.abs(one!.ampHoursToGo))} ${one!.ampHoursToGo < 0 ? 'less' : 'more'}`;
+    return `Group ${one!.group + 1} is ${millivoltsText(one!.deviationVolts)} ${away}, outside. It needs ${needs}.`;
+  }
+  const all = groupsText(outside.map((group) => group.group));
+  return `${all.charAt(0).toUpperCase()}${all.slice(1)} are outside, at most ${millivoltsText(worst.deviationVolts)} ${side}.`;
+}
+
+/** The module goes into the pack. @throws DomainError 409 where it is not ready */
+export async function fitCharge(
+  deps: Deps,
+  member: Member,
+  id: string,
+  rev: number,
+  input: { note?: string | null },
+  now: number,
+): Promise<ChargeDto> {
+  const dto = await changeCharge(deps, member, id, rev, now, async (write) => {
+    const { manager, file } = write;
+    const { charge, spare } = file;
+    if (charge.stage !== 'ready') throw wrongStage(write, 'Only what was checked and is in tolerance is fitted.');
+    charge.stage = 'fitted';
+    charge.closedAt = now;
+    await updateSpare(manager, charge.workshopId, spare.id, { fittedAt: now });
+    const place = charge.modulePosition === null ? '' : ` as module ${charge.modulePosition}`;
+    write.note('fitted', `Fitted: ${spare.label}${place}.${input.note ? ` ${bare(input.note)}.` : ''}`);
+  });
+  announceStock(deps, member, now);
+  return dto;
+}
+
+/** The spare goes back on the shelf, in tolerance or not. @throws DomainError 409 before its check is due */
+export async function shelveCharge(
+  deps: Deps,
+  member: Member,
+  id: string,
+  rev: number,
+  input: { shelfPlace: string | null; note?: string | null },
+  now: number,
+): Promise<ChargeDto> {
+  const dto = await changeCharge(deps, member, id, rev, now, async (write) => {
+    const { manager, file } = write;
+    const { charge, spare } = file;
+    if (charge.stage !== 'ready' && charge.stage !== 'check-due')
+      throw wrongStage(write, 'It goes back on the shelf after its rest. To end it before, stop it.');
+    charge.stage = 'shelved';
+    charge.closedAt = now;
+    if (input.shelfPlace !== null) {
+      await updateSpare(manager, charge.workshopId, spare.id, { shelfPlace: input.shelfPlace });
+      spare.shelfPlace = input.shelfPlace;
+    }
+    const place = spare.shelfPlace === null ? 'Back on the shelf' : `Back on the shelf, ${spare.shelfPlace}`;
+    const unread =
+      charge.checkedAt === null ? ' Its groups were not checked: read them before it is planned again.' : '';
+    write.note('shelved', `${place}.${input.note ? ` ${bare(input.note)}.` : ''}${unread}`);
+  });
+  announceStock(deps, member, now);
+  return dto;
+}
+
+/**
+ * Gives a charge to a colleague, with the alerts that are open. Own ones, and those that nobody has, by whoever runs
+ * charges; a colleague's by who gives out people.
+ */
+export function handOver(
+  deps: Deps,
+  member: Member,
+  id: string,
+  rev: number,
+  input: { personId: string },
+  now: number,
+): Promise<ChargeDto> {
+  return changeCharge(deps, member, id, rev, now, async (write) => {
+    const { file } = write;
+    const { charge, people } = file;
+    if (!isOpen(charge.stage)) throw wrongStage(write, 'It is over and nobody’s any more.');
+    const other = people.get(input.personId);
+    if (!other) throw notFound('This person');
+    if (other.disabledAt !== null) throw invalid({ personId: `${other.name} is disabled. Choose somebody else.` });
+    const own = charge.personId === null || charge.personId === member.personId;
+    const from = charge.personId === null ? null : (people.get(charge.personId)?.name ?? null);
+    if (!own && !can(member.role, 'charge:assign'))
+      throw forbidden(`This is ${from}'s charge. ${from} or a foreman hands it over.`);
+    charge.personId = other.id;
+    await passAlerts(write);
+    write.note('handed-over', from === null ? `${other.name} has it.` : `From ${from} to ${other.name}.`);
+  });
+}
+
+async function passAlerts({ manager, file }: ChargeWrite): Promise<void> {
+  const { charge } = file;
+  for (const alert of await alertsOfCharge(manager, charge.workshopId, charge.id)) {
+    if (alert.clearedAt !== null || alert.takenAt !== null) continue;
+    await updateAlert(manager, charge.workshopId, alert.id, { personId: charge.personId });
+  }
+}

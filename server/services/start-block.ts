@@ -1,0 +1,47 @@
+import type { EntityManager } from 'typeorm';
+import { runningHoldsOn } from '../repositories/charge-rows.repository';
+import { chargeNames } from '../repositories/charges.repository';
+import { sheetBlock, type CheckSheet } from './charge-checks';
+import type { ChargeFile } from './charge-file';
+import { stepsOfSwap } from './charge-steps';
+import { titleOf } from './charge-words';
+
+export interface ChannelHolder {
+  channelName: string;
+  chargeId: string;
+  title: string;
+  stage: string;
+}
+
+/** The charges that run on the channels of a step now, but this one. */
+export async function holdersOfStep(
+  manager: EntityManager,
+  file: ChargeFile,
+  stepIndex: number,
+): Promise<ChannelHolder[]> {
+  const { charge, channels } = file;
+  const ids = stepsOfSwap(charge.option, stepIndex).flatMap((index) => charge.option.steps[index]!.channelIds);
+  const running = await runningHoldsOn(manager, charge.workshopId, ids);
+  const holds = running.filter((hold) => hold.chargeId !== charge.id);
+  const names = await chargeNames(
+    manager,
+    charge.workshopId,
+    holds.map((hold) => hold.chargeId),
+  );
+  return holds.map((hold) => {
+    const holder = names.get(hold.chargeId)!;
+    const channelName = channels.get(hold.channelId)?.name ?? 'The channel';
+    return { channelName, chargeId: holder.id, title: titleOf(holder), stage: holder.stage };
+  });
+}
+
+export const takenText = (holder: ChannelHolder): string =>
+  `${holder.channelName} is taken by ${holder.title}. Wait until it is free, or plan on another channel.`;
+
+/** Sentence why the timer cannot be started now; null: it can. */
+export async function startBlock(manager: EntityManager, file: ChargeFile, sheet: CheckSheet): Promise<string | null> {
+  const block = sheetBlock(sheet);
+  if (block) return block.text;
+  const [holder] = await holdersOfStep(manager, file, 0);
+  return holder ? takenText(holder) : null;
+}
