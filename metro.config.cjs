@@ -21,7 +21,7 @@ const ours = new RegExp(`^${root}/(tests|server|data|dist[^/]*|\\.tsbuild|\\.git
 config.resolver.blockList = [config.resolver.blockList ?? [], ours].flat();
 
 // The first load carries what its screen shows and no more. In development the packages are taken as they are.
-splitChunks();
+splitChunks(process.env.BIDEWELL_CHUNK_LIST);
 config.transformer.asyncRequireModulePath = path.join(__dirname, 'shared/client/async-require.ts');
 if (process.env.NODE_ENV === 'production') {
   const lean = leanZod(__dirname);

@@ -22,6 +22,7 @@ const webInputs = [
   'tsconfig.json',
   'metro.config.cjs',
   'server/cli/build.mjs',
+  'server/cli/web',
 ];
 const serverInputs = ['server', 'calc', 'shared/contract', 'package-lock.json', 'tsconfig.json'];
 
@@ -66,12 +67,15 @@ async function buildWeb() {
   // Built aside and swapped in, so that a build that fails or is stopped leaves the running one whole.
   const fresh = fromRoot('dist-fresh');
   fs.rmSync(fresh, { recursive: true, force: true });
+  const chunkList = fromRoot('node_modules/.cache/bidewell-chunks.json');
+  fs.rmSync(chunkList, { force: true });
   runOrExit(
     process.execPath,
     [fromRoot('node_modules/expo/bin/cli'), 'export', '-p', 'web', '--output-dir', 'dist-fresh'],
-    webEnv,
+    { ...webEnv, BIDEWELL_CHUNK_LIST: chunkList },
   );
   await precompress(fresh);
+  fs.copyFileSync(chunkList, path.join(fresh, '.chunks.json')); // the server serves no dot files
   fs.writeFileSync(path.join(fresh, '.stamp'), stamp);
   fs.rmSync(fromRoot('dist'), { recursive: true, force: true });
   fs.renameSync(fresh, fromRoot('dist'));

@@ -4,6 +4,8 @@
 // and forms would weigh on the sign-in page. Here the shared modules are parted by which routes need them, and a
 // route names all its files (shared/client/async-require.ts loads them). It hooks in where Expo names its files; the
 // versions are pinned, and a change of Expo's inside stops the build with a sentence instead of going unnoticed.
+const fs = require('node:fs');
+const path = require('node:path');
 const chunkModule = require('@expo/metro-config/build/serializer/serializeChunks');
 const nameModule = require('@expo/metro-config/build/serializer/computeChunkFilenames');
 
@@ -65,6 +67,17 @@ function joinSmall(groups) {
   }
 }
 
+/** What weighs most in a part, for a file name that says something: a package, or 'own'. */
+function nameOf(part) {
+  const weights = new Map();
+  for (const module of part.modules) {
+    const inPackage = /[/\\]node_modules[/\\]((?:@[^/\\]+[/\\])?[^/\\]+)/.exec(module.path);
+    const name = inPackage ? inPackage[1].replace(/[^a-z0-9-]+/gi, '-').replace(/^-+/, '') : 'own';
+    weights.set(name, (weights.get(name) ?? 0) + codeLength(module));
+  }
+  return [...weights].sort((a, b) => b[1] - a[1])[0]?.[0] ?? 'own';
+}
+
 /** Parts the common chunk; afterwards each chunk knows which files an async import needs. */
 function splitCommonChunk(chunks, chunksByPath) {
   const common = [...chunks].find((chunk) => chunk.name === '/__common.js');
@@ -91,7 +104,14 @@ function splitCommonChunk(chunks, chunksByPath) {
 
   parts.forEach((part, index) => {
     if (part.always) return;
-    const chunk = new common.constructor(`/__shared-${index}.js`, part.modules, graph, options, true, true);
+    const chunk = new common.constructor(
+      `/shared-${index}-${nameOf(part)}.js`,
+      part.modules,
+      graph,
+      options,
+      true,
+      true,
+    );
     for (const required of common.requiredChunks) chunk.requiredChunks.add(required);
     for (const module of part.modules) {
       common.deps.delete(module);
@@ -113,7 +133,21 @@ function splitCommonChunk(chunks, chunksByPath) {
   for (const chunk of chunks) chunk.neededFor = (target) => filesOf.get(target);
 }
 
-function splitChunks() {
+/** Which modules went into which file, for the check of the first load (tests/bench/first-load.ts). */
+function writeList(file, chunks, fileNames) {
+  const list = [...chunks].map((chunk) => {
+    const modules = [...chunk.deps].map((module) => path.relative(chunk.options.projectRoot, module.path));
+    return [fileNames.get(chunk), modules.sort()];
+  });
+  fs.mkdirSync(path.dirname(file), { recursive: true });
+  fs.writeFileSync(file, JSON.stringify(Object.fromEntries(list), null, 1));
+}
+
+/**
+ * Hooks the splitting into Expo's serializer, for the bundles made by this process.
+ * @param listFile where to write which modules went into which file
+ */
+function splitChunks(listFile) {
   const { Chunk } = chunkModule;
   const expected = ['getAsyncChunkTargets', 'getComputedPathsForAsyncDependencies'];
   if (
@@ -126,7 +160,9 @@ function splitChunks() {
   const { precomputeChunkFilenames } = nameModule;
   nameModule.precomputeChunkFilenames = (args) => {
     splitCommonChunk(args.chunks, args.chunksByPath);
-    return precomputeChunkFilenames(args);
+    const fileNames = precomputeChunkFilenames(args);
+    if (listFile) writeList(listFile, args.chunks, fileNames);
+    return fileNames;
   };
 
   // File names carry a hash of what they lead to, so the shared files have to count as led to.
