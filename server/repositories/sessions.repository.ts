@@ -1,4 +1,4 @@
-import { IsNull, MoreThan, type EntityManager } from 'typeorm';
+import { IsNull, MoreThan, Not, type EntityManager } from 'typeorm';
 import { Person } from '../entities/person';
 import { Session } from '../entities/session';
 
@@ -45,23 +45,18 @@ export const listOpenSessions = (
     take: 100,
   });
 
-/** Ends every open session of a person; gives their ids. */
+/** Ends the open sessions of a person, or all but one; gives the ids of those ended. */
 export async function endSessionsOf(
   manager: EntityManager,
   workshopId: string,
   personId: string,
   now: number,
   reason: string,
+  exceptId?: string,
 ): Promise<string[]> {
-  const open = await manager.find(Session, {
-    select: { id: true },
-    where: { workshopId, personId, endedAt: IsNull() },
-  });
-  await manager.update(
-    Session,
-    { workshopId, personId, endedAt: IsNull() },
-    { endedAt: now, endReason: reason, successor: null },
-  );
+  const where = { workshopId, personId, endedAt: IsNull(), ...(exceptId ? { id: Not(exceptId) } : {}) };
+  const open = await manager.find(Session, { select: { id: true }, where });
+  await manager.update(Session, where, { endedAt: now, endReason: reason, successor: null });
   return open.map((session) => session.id);
 }
 

@@ -2,8 +2,22 @@
 import type { RoutesModule } from './define-route';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
+import { peopleRoutes } from './people.routes';
 import { plansRoutes } from './plans.routes';
+import { sessionRoutes } from './session.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
+import { wallRoutes } from './wall.routes';
+import { workshopRoutes } from './workshop.routes';
 
-export const routesModules: RoutesModule[] = [healthRoutes, equipmentRoutes, stockRoutes, plansRoutes, waitsRoutes];
+export const routesModules: RoutesModule[] = [
+  healthRoutes,
+  sessionRoutes,
+  peopleRoutes,
+  workshopRoutes,
+  wallRoutes,
+  equipmentRoutes,
+  stockRoutes,
+  plansRoutes,
+  waitsRoutes,
+];

@@ -43,6 +43,8 @@ export interface RouteSpec<Body = undefined, Query = undefined> {
   status?: number;
   /** Throttle of the asking address; 429 beyond it. */
   limit?: AddressLimit;
+  /** There only while the demo is on. */
+  demoOnly?: boolean;
   handle: (input: RouteInput<Body, Query>) => Promise<unknown>;
 }
 

@@ -23,7 +23,7 @@ async function admit(deps: Deps, policy: Policy, request: Request, now: number):
   if (policy.kind === 'public') return { member: null, wall: null };
   // A wall's cookie opens only its own routes, a member's only theirs: the other kind of asker is nobody there.
   if (policy.kind === 'wall') {
-    const wall = await wallOf(deps, cookieOf(request, 'bidewell_wall'));
+    const wall = await wallOf(deps, cookieOf(request, 'bidewell_wall'), now);
     if (wall) return { member: null, wall };
     throw new DomainError(401, 'not_paired', 'This wall is not paired, or its pairing was taken back. Pair it again.');
   }
@@ -104,6 +104,7 @@ function handlerOf(deps: Deps, spec: AnySpec): DeclaredHandler {
  */
 export function makeRegistrar(router: Router, deps: Deps): RouteRegistrar {
   return (spec) => {
+    if (spec.demoOnly && !deps.config.demo) return;
     if (spec.idempotent && (spec.policy.kind === 'public' || spec.policy.kind === 'wall'))
       throw new Error(`${spec.method} ${spec.path}: an Idempotency-Key belongs to a member.`);
     const path = spec.path.startsWith('//') ? spec.path.slice(1) : `/api${spec.path}`;

@@ -43,6 +43,8 @@ export interface Limits {
    * @throws DomainError 429 with the seconds to wait
    */
   take(name: LimitName, key: string): Promise<void>;
+  /** Counts one without refusing. */
+  count(name: LimitName, key: string): Promise<void>;
   /** Gives one counted try back. */
   giveBack(name: LimitName, key: string): Promise<void>;
   /** Whether the next try would still be let through. */
@@ -70,6 +72,9 @@ export function makeLimits(changes: Partial<Record<LimitName, LimitRule>> = {}):
         if (refused instanceof Error) throw refused;
         throw tooMany(Math.max(1, Math.ceil((refused as RateLimiterRes).msBeforeNext / 1000)));
       }
+    },
+    async count(name, key) {
+      await limiter(name).penalty(key);
     },
     async giveBack(name, key) {
       await limiter(name).reward(key);

@@ -11,3 +11,5 @@ export const sessionIdleMs = 14 * day;
 export const refreshGraceMs = 20_000;
 /** Invitations and reset links. */
 export const linkLifeMs = 72 * 60 * minute;
+/** The longest a browser keeps a cookie; a wall's own right has no end. */
+export const wallCookieLifeMs = 400 * day;

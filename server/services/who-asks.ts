@@ -2,10 +2,14 @@ import type { Deps, Member } from '../deps';
 import type { Person } from '../entities/person';
 import type { Session } from '../entities/session';
 import { findSessionWithPerson } from '../repositories/sessions.repository';
-import { findWallByTokenHash } from '../repositories/walls.repository';
+import { findWallByTokenHash, updateWall } from '../repositories/walls.repository';
 import { readAccessToken } from './access-token';
 import { sessionIdleMs } from './session-limits';
 import { hashToken } from './tokens';
+import { inTransaction } from './unit-of-work';
+
+/** How exactly a wall's 'last heard' is kept, ms: a write for every question would be one too many. */
+export const heardStepMs = 60_000;
 
 export const memberFrom = (person: Person, sessionId: string): Member => ({
   workshopId: person.workshopId,
@@ -37,12 +41,17 @@ export async function memberOf(
   return { member: memberFrom(found.person, claims.sessionId), accessUntil: claims.expiresAt };
 }
 
-/** The wall a wall token stands for; null for none or a revoked one. */
+/** The wall a wall token stands for; null for none or a revoked one. Notes that it was heard of. */
 export async function wallOf(
   deps: Deps,
   wallToken: string | undefined,
+  now: number,
 ): Promise<{ id: string; workshopId: string } | null> {
   if (!wallToken) return null;
   const wall = await findWallByTokenHash(deps.dataSource.manager, hashToken(wallToken));
-  return wall && wall.revokedAt === null ? { id: wall.id, workshopId: wall.workshopId } : null;
+  if (!wall || wall.revokedAt !== null) return null;
+  const { id, workshopId } = wall;
+  if (wall.lastHeardAt === null || now - wall.lastHeardAt >= heardStepMs)
+    await inTransaction(deps, (manager) => updateWall(manager, workshopId, id, { lastHeardAt: now }));
+  return { id, workshopId };
 }

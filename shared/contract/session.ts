@@ -21,10 +21,7 @@ const utf8Length = (text: string): number =>
 /** Passwords are taken as they are typed; bcrypt reads 72 bytes, so longer ones are refused and not cut. */
 export const newPassword = z.string().check(
   z.refine((value) => [...value].length >= 12, 'At least 12 characters; 15 or more is better.'),
-  z.refine(
-    (value) => utf8Length(value.normalize('NFKC')) <= 72,
-    'Longer than 72 bytes. Use a shorter one.',
-  ),
+  z.refine((value) => utf8Length(value.normalize('NFKC')) <= 72, 'Longer than 72 bytes. Use a shorter one.'),
 );
 
 export const signInSchema = z.object({
@@ -56,6 +53,21 @@ export type CreateWorkshopInput = z.infer<typeof createWorkshopSchema>;
 /** Joining by an invitation and setting a new password by a reset link share a page and a one-use token. */
 export const joinSchema = z.object({ token: z.string(), name: text('Your name', 80), password: newPassword });
 export const resetSchema = z.object({ token: z.string(), password: newPassword });
+
+/** One's own name, and a new password against the present one. */
+export const changeMeSchema = z
+  .object({
+    name: z.optional(text('Your name', 80)),
+    currentPassword: z.optional(z.string().check(z.maxLength(1000, 'This password is too long.'))),
+    password: z.optional(newPassword),
+  })
+  .check(
+    z.refine((me) => me.password === undefined || Boolean(me.currentPassword), {
+      message: 'Type your present password too.',
+      path: ['currentPassword'],
+    }),
+  );
+export type ChangeMeInput = z.infer<typeof changeMeSchema>;
 
 export const demoSignInSchema = z.object({ role: z.enum(roles) });
 

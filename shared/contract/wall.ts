@@ -52,6 +52,15 @@ export interface WallRequestDto {
   device: string;
 }
 
+/** What a paired wall knows of itself. */
+export interface WallMeDto {
+  id: string;
+  name: string;
+  diagonalInches: number | null;
+  distanceMetres: number | null;
+  workshop: { id: string; name: string; zone: string };
+}
+
 export interface WallDto {
   id: string;
   name: string;

@@ -22,6 +22,9 @@ export const workshopSettingsSchema = z.object({
   inrushLimitC: quantity({ name: 'Inrush limit', unit: 'C', min: 0.05, max: 10 }),
   lagLimitMillivolts: quantity({ name: 'Lag limit', unit: 'mV', min: 1, max: 200 }),
 });
+/** What is left out stays as it is. */
+export const changeWorkshopSchema = z.partial(workshopSettingsSchema);
+export type ChangeWorkshopInput = z.infer<typeof changeWorkshopSchema>;
 export type WorkshopSettings = z.infer<typeof workshopSettingsSchema>;
 
 export interface WorkshopDto extends WorkshopSettings {
