@@ -23,8 +23,9 @@ const wholeMathjs = {
 };
 
 const wholeZod = {
-  regex: '^zod($|/(?!mini$))',
-  message: "Pulls all of zod into the page. Import 'zod/mini'; the web build keeps only what is used of it.",
+  regex: '^(zod($|/(?!mini$))|@hookform/resolvers/zod$)',
+  message:
+    "Pulls all of zod into the page. Import 'zod/mini', of which the web build keeps only what is used, and '@hookform/resolvers/standard-schema'.",
 };
 
 const leftOutRouter = {

@@ -24,11 +24,10 @@ config.resolver.blockList = [config.resolver.blockList ?? [], ours].flat();
 splitChunks(process.env.BIDEWELL_CHUNK_LIST);
 config.transformer.asyncRequireModulePath = path.join(__dirname, 'shared/client/async-require.ts');
 if (process.env.NODE_ENV === 'production') {
-  const lean = leanZod(__dirname);
+  const zodMini = leanZod(__dirname);
   const resolveFurther = config.resolver.resolveRequest;
   config.resolver.resolveRequest = (context, moduleName, platform) => {
-    const filePath = lean.get(moduleName);
-    if (filePath) return { type: 'sourceFile', filePath };
+    if (moduleName === 'zod/mini') return { type: 'sourceFile', filePath: zodMini };
     const found = (resolveFurther ?? context.resolveRequest)(context, moduleName, platform);
     return (found.type === 'sourceFile' && leaveOut(context.originModulePath, found.filePath)) || found;
   };

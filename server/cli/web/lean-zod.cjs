@@ -1,8 +1,8 @@
 // zod for the web build, with only what our schemas use.
 //
 // Metro keeps a whole package as soon as one name of it is used: zod/mini weighs 54 KiB gzip that way, of which our
-// schemas use about a tenth. esbuild leaves the rest out. Both ways in, the schemas' and the form resolver's, are built
-// together, so that they share one copy of zod's core and its error class.
+// schemas use about a tenth. esbuild leaves the rest out. Nothing else in the page may import zod: a second copy of its
+// core would not know the first one's errors (the forms use the resolver for any standard schema, which imports none).
 const esbuild = require('esbuild');
 const fs = require('node:fs');
 const path = require('node:path');
@@ -31,34 +31,21 @@ function usedNames(root) {
 }
 
 /**
- * Writes the lean files and gives which import each of them answers.
+ * Writes the lean zod/mini.
  * @param root the repository
- * @returns import name → file
+ * @returns the file that answers for `zod/mini`
  */
 function leanZod(root) {
-  const folder = path.join(root, 'node_modules/.cache/bidewell-zod');
-  fs.rmSync(folder, { recursive: true, force: true });
-  fs.mkdirSync(path.join(folder, 'in'), { recursive: true });
-  fs.writeFileSync(path.join(folder, 'in/mini.js'), `export { ${usedNames(root).join(', ')} } from 'zod/mini';\n`);
-  // By its file, because esbuild takes `external` to mean the package's subpaths too.
-  const resolver = path.join(root, 'node_modules/@hookform/resolvers/zod/dist/zod.mjs');
-  fs.writeFileSync(path.join(folder, 'in/resolver.js'), `export { zodResolver } from ${JSON.stringify(resolver)};\n`);
+  const outfile = path.join(root, 'node_modules/.cache/bidewell-zod/mini.js');
   esbuild.buildSync({
-    absWorkingDir: root,
-    entryPoints: [path.join(folder, 'in/mini.js'), path.join(folder, 'in/resolver.js')],
-    outdir: folder,
+    stdin: { contents: `export { ${usedNames(root).join(', ')} } from 'zod/mini';`, resolveDir: root },
+    outfile,
     bundle: true,
-    splitting: true,
     format: 'esm',
     target: 'es2022',
-    external: ['react-hook-form', '@hookform/resolvers'],
-    chunkNames: 'core',
     logLevel: 'warning',
   });
-  return new Map([
-    ['zod/mini', path.join(folder, 'mini.js')],
-    ['@hookform/resolvers/zod', path.join(folder, 'resolver.js')],
-  ]);
+  return outfile;
 }
 
 module.exports = { leanZod };
