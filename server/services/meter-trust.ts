@@ -8,9 +8,9 @@ const DAY_MS = 86_400_000;
 const FRESH_OFFSET_SD_VOLTS = 0.001;
 /** Hand meter whose cross-check is old or was never made, V: what an ordinary one is good for on its 6 V range. A guess. */
 const OLD_OFFSET_SD_VOLTS = 0.002;
-/** A charger's own voltmeter, per group, V: cross-checked, and cross-checked too long ago. Guesses. */
-const FRESH_CHARGER_SD_VOLTS = 0.0015;
-const OLD_CHARGER_SD_VOLTS = 0.003;
+/** A charger's own voltmeter at its terminals, V: cross-checked, and cross-checked too long ago. Guesses. */
+const FRESH_CHARGER_SD_VOLTS = 0.002;
+const OLD_CHARGER_SD_VOLTS = 0.005;
 
 /** True where the meter was cross-checked, and not longer ago than that counts. */
 export const isCrossChecked = (meter: Pick<Meter, 'checkedAt'>, now: number): boolean =>
