@@ -2,7 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { MeterDto, ModuleTypeDto } from '@/shared/contract/equipment';
 import type { PlanDto } from '@/shared/contract/plan';
 import type { SpareDto } from '@/shared/contract/spare';
-import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from '../../support/forms';
+import { moduleTypeForm, planForm, readingForm, spareForm } from '../../support/forms';
 import { makeTestServer, type TestAgent, type TestServer } from '../../support/server';
 import { created, stock, type Stocked } from '../../support/stocked';
 
@@ -50,6 +50,7 @@ describe('a plan', () => {
     const spare = await newSpare('S-40');
     const first = await plan(spare.id);
     expect((await plan(spare.id)).plan).toEqual(first.plan);
+    server.clock.advance(1000);
     await technician.post(`/api/spares/${spare.id}/readings`, readingForm({ meterId: stocked.meter.id })).expect(201);
     expect((await plan(spare.id)).plan.options[0]!.totalS.p90).not.toBe(first.plan.options[0]!.totalS.p90);
   });
