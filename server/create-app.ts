@@ -1,8 +1,11 @@
 import express, { type Express } from 'express';
 import type { Deps } from './deps';
+import { metroProxy } from './middleware/metro-proxy';
 import { notHere, problems } from './middleware/problems';
 import { requestLog } from './middleware/request-log';
 import { sameOrigin } from './middleware/same-origin';
+import { securityHeaders } from './middleware/security-headers';
+import { webApp } from './middleware/web-app';
 import { routesModules } from './routes/all';
 import { makeRegistrar } from './routes/register-route';
 
@@ -16,6 +19,10 @@ export function createApp(deps: Deps): Express {
   app.set('query parser', 'simple');
   app.use(requestLog(deps.log));
 
+  const web = webApp(config.webDir);
+  // Metro's page and its answers to a reload hold scripts that no policy could name.
+  app.use(securityHeaders(config.metroPort === null ? (web.html ?? '') : null));
+
   app.use('/api', (_request, response, next) => {
     response.set('Cache-Control', 'no-store');
     next();
@@ -28,6 +35,7 @@ export function createApp(deps: Deps): Express {
   for (const addRoutes of routesModules) addRoutes(route, router);
   app.use(router);
   app.use('/api', notHere);
+  app.use(config.metroPort === null ? web.serve : metroProxy(config.metroPort));
   app.use(notHere);
   app.use(problems(deps.log));
   return app;

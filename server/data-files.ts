@@ -1,4 +1,13 @@
+import fs from 'node:fs';
 import path from 'node:path';
+
+/** Everything an installation keeps lies in one folder, which only its owner can read. */
+export function prepareDataFolder(dataDir: string): void {
+  fs.mkdirSync(dataDir, { recursive: true, mode: 0o700 });
+  fs.chmodSync(dataDir, 0o700);
+}
 
 /** Where the database lies within the data folder. */
 export const databaseFile = (dataDir: string): string => path.join(dataDir, 'bidewell.sqlite');
+/** Where copies of it go unless somebody says otherwise. */
+export const backupFolder = (dataDir: string): string => path.join(dataDir, 'backups');

@@ -1,4 +1,4 @@
-import { IsNull, type EntityManager } from 'typeorm';
+import { In, IsNull, type EntityManager } from 'typeorm';
 import { Wall } from '../entities/wall';
 
 /** A wall by the hash of its token alone: the token says no workshop, the row does. */
@@ -23,4 +23,9 @@ export const updateWall = async (
   change: Partial<Wall>,
 ): Promise<void> => {
   await manager.update(Wall, { workshopId, id }, change);
+};
+
+/** Notes when walls were last heard of; the connected ones of all workshops at once, by the ids their tokens proved. */
+export const touchWalls = async (manager: EntityManager, ids: string[], now: number): Promise<void> => {
+  await manager.update(Wall, { id: In(ids) }, { lastHeardAt: now });
 };

@@ -1,4 +1,4 @@
-import type { EntityManager } from 'typeorm';
+import { In, type EntityManager } from 'typeorm';
 import { Workshop } from '../entities/workshop';
 
 export const findWorkshop = (manager: EntityManager, workshopId: string): Promise<Workshop | null> =>
@@ -21,3 +21,9 @@ export const updateWorkshop = async (
 ): Promise<void> => {
   await manager.update(Workshop, { id: workshopId }, change);
 };
+
+/** Board revisions by workshop id. */
+export async function boardRevsOf(manager: EntityManager, workshopIds: string[]): Promise<Map<string, number>> {
+  const rows = await manager.find(Workshop, { select: { id: true, boardRev: true }, where: { id: In(workshopIds) } });
+  return new Map(rows.map((row) => [row.id, row.boardRev]));
+}

@@ -2,7 +2,7 @@ import type { Deps, Member } from '../deps';
 import type { Person } from '../entities/person';
 import type { Session } from '../entities/session';
 import { findSessionWithPerson } from '../repositories/sessions.repository';
-import { findWallByTokenHash, updateWall } from '../repositories/walls.repository';
+import { findWall, findWallByTokenHash, updateWall } from '../repositories/walls.repository';
 import { readAccessToken } from './access-token';
 import { sessionIdleMs } from './session-limits';
 import { hashToken } from './tokens';
@@ -10,6 +10,8 @@ import { inTransaction } from './unit-of-work';
 
 /** How exactly a wall's 'last heard' is kept, ms: a write for every question would be one too many. */
 export const heardStepMs = 60_000;
+
+type Asking = Pick<Deps, 'dataSource' | 'secrets'>;
 
 export const memberFrom = (person: Person, sessionId: string): Member => ({
   workshopId: person.workshopId,
@@ -29,7 +31,7 @@ export const sessionHolds = (session: Session, now: number): boolean =>
  * @returns null for nobody; `accessUntil` is epoch ms
  */
 export async function memberOf(
-  deps: Deps,
+  deps: Asking,
   accessToken: string | undefined,
   now: number,
 ): Promise<{ member: Member; accessUntil: number } | null> {
@@ -43,7 +45,7 @@ export async function memberOf(
 
 /** The wall a wall token stands for; null for none or a revoked one. Notes that it was heard of. */
 export async function wallOf(
-  deps: Deps,
+  deps: Asking,
   wallToken: string | undefined,
   now: number,
 ): Promise<{ id: string; workshopId: string } | null> {
@@ -54,4 +56,23 @@ export async function wallOf(
   if (wall.lastHeardAt === null || now - wall.lastHeardAt >= heardStepMs)
     await inTransaction(deps, (manager) => updateWall(manager, workshopId, id, { lastHeardAt: now }));
   return { id, workshopId };
+}
+
+/** Why somebody who was let in has to go now; null: they may stay. */
+export async function endReasonOf(
+  deps: Pick<Deps, 'dataSource'>,
+  asker: { kind: 'member'; member: Member } | { kind: 'wall'; wall: { id: string; workshopId: string } },
+  now: number,
+): Promise<'expired' | 'disabled' | 'role-changed' | 'revoked' | null> {
+  const { manager } = deps.dataSource;
+  if (asker.kind === 'wall') {
+    const wall = await findWall(manager, asker.wall.workshopId, asker.wall.id);
+    return wall && wall.revokedAt === null ? null : 'revoked';
+  }
+  const { workshopId, sessionId, role } = asker.member;
+  const found = await findSessionWithPerson(manager, workshopId, sessionId);
+  if (!found) return 'revoked';
+  if (found.person.disabledAt !== null) return 'disabled';
+  if (!sessionHolds(found.session, now)) return 'expired';
+  return found.person.role === role ? null : 'role-changed';
 }

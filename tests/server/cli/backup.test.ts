@@ -3,7 +3,7 @@ import fs from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import { afterEach, beforeEach, expect, test } from 'vitest';
-import { backUp } from '@/server/cli/backup';
+import { backUp } from '@/server/back-up';
 
 let folder: string;
 beforeEach(() => (folder = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-backup-'))));

@@ -1,0 +1,42 @@
+import Database from 'better-sqlite3';
+import fs from 'node:fs';
+import path from 'node:path';
+
+/**
+ * Copies a database page by page, what is still in its write-ahead log included, and checks the copy before it gets
+ * its name. Writers are not held up.
+ * @param source database file
+ * @param folder where the copy goes; made when missing
+ * @param now instant in the copy's name
+ * @returns the copy's path
+ * @throws Error when there is no database or the copy does not pass SQLite's integrity check
+ */
+export async function backUp(source: string, folder: string, now: Date): Promise<string> {
+  if (!fs.existsSync(source))
+    throw new Error(`There is no database at ${source}. Set BIDEWELL_DATA to the data folder of the server.`);
+  fs.mkdirSync(folder, { recursive: true });
+  const stamp = now
+    .toISOString()
+    .replace(/\.\d+Z$/, 'Z')
+    .replaceAll(':', '-');
+  const file = path.join(folder, `bidewell-${stamp}.sqlite`);
+  const unfinished = `${file}.unfinished`;
+  const database = new Database(source, { readonly: true, fileMustExist: true });
+  try {
+    await database.backup(unfinished);
+  } finally {
+    database.close();
+  }
+  const copy = new Database(unfinished);
+  try {
+    // One file that needs no log beside it, wherever it is carried.
+    copy.pragma('journal_mode = DELETE');
+    const verdict = copy.pragma('integrity_check', { simple: true });
+    if (verdict !== 'ok') throw new Error(`The copy is damaged (${String(verdict)}) and was left at ${unfinished}.`);
+  } finally {
+    copy.close();
+  }
+  fs.chmodSync(unfinished, 0o600);
+  fs.renameSync(unfinished, file);
+  return file;
+}

@@ -1,0 +1,41 @@
+/** The process: reads the environment, starts the server, and ends it properly. */
+import { readConfig } from './config';
+import { makeLog } from './middleware/request-log';
+import { startServer } from './start-server';
+
+function readConfigOrExit() {
+  try {
+    return readConfig(process.env);
+  } catch (error) {
+    process.stderr.write(`bidewell: ${error instanceof Error ? error.message : String(error)}\n`);
+    process.exit(1);
+  }
+}
+
+const config = readConfigOrExit();
+const log = makeLog(config.logLevel);
+
+const fail = (what: string) => (error: unknown) => {
+  log.fatal({ err: error }, what);
+  process.stderr.write(`bidewell: ${error instanceof Error ? error.message : String(error)}\n`);
+  process.exit(1);
+};
+// Nobody knows what state is left after these: end, and let whoever watches start again.
+process.on('unhandledRejection', fail('a promise failed and nobody listened'));
+process.on('uncaughtException', fail('an error was caught by nobody'));
+
+try {
+  const running = await startServer(config, log);
+  log.info({ address: running.address, demo: config.demo, dataDir: config.dataDir }, 'ready');
+  let stopping = false;
+  for (const signal of ['SIGTERM', 'SIGINT'] as const) {
+    process.on(signal, () => {
+      if (stopping) process.exit(1);
+      stopping = true;
+      log.info({ signal }, 'stopping');
+      running.stop().then(() => process.exit(0), fail('the server did not stop properly'));
+    });
+  }
+} catch (error) {
+  fail('the server did not start')(error);
+}

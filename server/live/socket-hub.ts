@@ -1,0 +1,178 @@
+import type { Server as HttpServer } from 'node:http';
+import { Server } from 'socket.io';
+import { heartbeatMs, type ClientToServerEvents, type ServerToClientEvents } from '@/shared/contract/live';
+import type { Deps } from '../deps';
+import { boardRevsOf } from '../repositories/workshops.repository';
+import { touchWalls } from '../repositories/walls.repository';
+import { toInstant } from '../services/instants';
+import { inTransaction } from '../services/unit-of-work';
+import { endReasonOf, heardStepMs } from '../services/who-asks';
+import { askerOf, handshakeFromOwnPage } from './handshake';
+import type { LiveEvent, LiveHub, LivePayload } from './hub';
+import { listen, type LiveSocket, type SocketAsker } from './socket-handlers';
+
+export interface SocketHub extends LiveHub {
+  attach(server: HttpServer): void;
+  /** One round of the heartbeat, as the timer does it. */
+  beat(): Promise<void>;
+  /** Closes all sockets; clients come back by themselves when a server answers again. Closes the attached server too. */
+  close(): Promise<void>;
+}
+
+type HubDeps = Pick<Deps, 'config' | 'dataSource' | 'secrets' | 'clock' | 'log'>;
+
+/** What a wall hears: that the board changed and that it is heard. The rest is people's. */
+const wallEvents: ReadonlySet<LiveEvent> = new Set<LiveEvent>([
+  'board:changed',
+  'charge:changed',
+  'workshop:changed',
+  'heartbeat',
+  'session:ended',
+]);
+
+const rooms = {
+  members: (workshopId: string) => `members ${workshopId}`,
+  walls: (workshopId: string) => `walls ${workshopId}`,
+  person: (id: string) => `person ${id}`,
+  session: (id: string) => `session ${id}`,
+  wall: (id: string) => `wall ${id}`,
+};
+
+const roomsOf = (asker: SocketAsker): string[] =>
+  asker.kind === 'wall'
+    ? [rooms.walls(asker.wall.workshopId), rooms.wall(asker.wall.id)]
+    : [
+        rooms.members(asker.member.workshopId),
+        rooms.person(asker.member.personId),
+        rooms.session(asker.member.sessionId),
+      ];
+
+const workshopOf = (asker: SocketAsker): string =>
+  asker.kind === 'wall' ? asker.wall.workshopId : asker.member.workshopId;
+
+/** The sockets of all workshops. Announces; keeps nothing for those who are away: they read the board when they come back. */
+export function makeSocketHub(deps: HubDeps): SocketHub {
+  const io = new Server<ClientToServerEvents, ServerToClientEvents, Record<string, never>, { asker: SocketAsker }>({
+    path: '/socket.io',
+    serveClient: false,
+    // In development Metro's own sockets arrive at the same server.
+    destroyUpgrade: deps.config.metroPort === null,
+    // A client sends its clock question and nothing else.
+    maxHttpBufferSize: 10_000,
+    allowRequest: (request, decide) => decide(null, handshakeFromOwnPage(deps, request)),
+  });
+  let timer: NodeJS.Timeout | null = null;
+  let beating: Promise<void> | null = null;
+  let wallsHeardAt = 0;
+
+  io.use((socket, next) => {
+    askerOf(deps, socket.request, (socket.handshake.auth as { as?: unknown }).as).then(
+      (asker) => {
+        if (!asker) {
+          next(new Error('signed_out'));
+          return;
+        }
+        socket.data.asker = asker;
+        next();
+      },
+      (error: unknown) => {
+        deps.log.error({ err: error }, 'a handshake failed');
+        next(new Error('failed'));
+      },
+    );
+  });
+
+  io.on('connection', (socket: LiveSocket) => {
+    void socket.join(roomsOf(socket.data.asker));
+    listen(socket, deps);
+    socket.on('disconnect', stopWhenAlone);
+    startTimer();
+    // Between the handshake's look at the database and this room somebody may have been signed out.
+    void greet(socket).catch((error: unknown) => deps.log.error({ err: error }, 'a socket was not greeted'));
+  });
+
+  async function greet(socket: LiveSocket): Promise<void> {
+    if (await endIfOver(socket, deps.clock.now())) return;
+    const workshopId = workshopOf(socket.data.asker);
+    const rev = (await boardRevsOf(deps.dataSource.manager, [workshopId])).get(workshopId) ?? 0;
+    socket.emit('heartbeat', { at: toInstant(deps.clock.now()), rev });
+  }
+
+  /** Ends a socket whose session or wall is over. */
+  async function endIfOver(socket: LiveSocket, now: number): Promise<boolean> {
+    const reason = await endReasonOf(deps, socket.data.asker, now);
+    if (!reason) return false;
+    socket.emit('session:ended', { reason });
+    socket.disconnect(true);
+    return true;
+  }
+
+  function startTimer(): void {
+    if (timer) return;
+    timer = setInterval(() => {
+      beating ??= beat()
+        .catch((error: unknown) => deps.log.error({ err: error }, 'the heartbeat failed'))
+        .finally(() => {
+          beating = null;
+        });
+    }, heartbeatMs);
+    timer.unref();
+  }
+
+  /** Nobody listens: nothing beats. */
+  function stopWhenAlone(): void {
+    if (io.sockets.sockets.size > 0 || !timer) return;
+    clearInterval(timer);
+    timer = null;
+  }
+
+  async function beat(): Promise<void> {
+    const now = deps.clock.now();
+    const sockets = [...io.sockets.sockets.values()];
+    for (const socket of sockets) await endIfOver(socket, now);
+    const askers = [...io.sockets.sockets.values()].map((socket) => socket.data.asker);
+    const workshops = [...new Set(askers.map(workshopOf))];
+    const revs = await boardRevsOf(deps.dataSource.manager, workshops);
+    for (const workshopId of workshops)
+      hub.toWorkshop(workshopId, 'heartbeat', { at: toInstant(now), rev: revs.get(workshopId) ?? 0 });
+    const walls = askers.flatMap((asker) => (asker.kind === 'wall' ? [asker.wall.id] : []));
+    if (walls.length > 0 && Math.abs(now - wallsHeardAt) >= heardStepMs) {
+      wallsHeardAt = now;
+      await inTransaction(deps, (manager) => touchWalls(manager, walls, now));
+    }
+  }
+
+  function emit<E extends LiveEvent>(to: string[], event: E, payload: LivePayload<E>): void {
+    // The map of events is one payload each; the generic of the library cannot follow that through a variable.
+    io.to(to).emit(event, ...([payload] as unknown as Parameters<ServerToClientEvents[E]>));
+  }
+
+  const hub: SocketHub = {
+    toWorkshop: (workshopId, event, payload) =>
+      emit(
+        wallEvents.has(event) ? [rooms.members(workshopId), rooms.walls(workshopId)] : [rooms.members(workshopId)],
+        event,
+        payload,
+      ),
+    toPerson: (_workshopId, personId, event, payload) => emit([rooms.person(personId)], event, payload),
+    end: (target, reason) => {
+      const room =
+        'sessionId' in target
+          ? rooms.session(target.sessionId)
+          : 'personId' in target
+            ? rooms.person(target.personId)
+            : rooms.wall(target.wallId);
+      io.to(room).emit('session:ended', { reason });
+      io.in(room).disconnectSockets(true);
+    },
+    attach: (server) => void io.attach(server),
+    beat,
+    close: async () => {
+      if (timer) clearInterval(timer);
+      timer = null;
+      await beating;
+      await io.close();
+    },
+  };
+  return hub;
+}
