@@ -48,7 +48,7 @@ export function terminalVoltsOf(input: StepInput, soc: number[], over: number[])
 }
 
 /** Integrates a step for `seconds` with mathjs's solveODE, whatever its stops. */
-export function integrateAgain(input: StepInput, seconds: number, tolerance = 1e-7): Course {
+export function integrateAgain(input: StepInput, seconds: number, tolerance = 1e-7, maxStep = 120): Course {
   const { groups, direction } = input;
   const n = groups.length;
   const efficiency = direction === 'charge' ? input.coulombicEfficiency : 1;
@@ -69,7 +69,7 @@ export function integrateAgain(input: StepInput, seconds: number, tolerance = 1e
     0,
     0,
   ];
-  const options = { method: 'RK45', tol: tolerance, firstStep: 1, maxStep: 120, minStep: 1e-4, maxIter: 1e6 };
+  const options = { method: 'RK45', tol: tolerance, firstStep: 1, maxStep, minStep: 1e-4, maxIter: 1e6 };
   const { t, y } = solveODE(rates, [0, seconds], start, options);
   return { s: t, state: y };
 }
