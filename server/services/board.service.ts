@@ -47,6 +47,14 @@ async function boardOf(manager: EntityManager, workshopId: string, now: number):
       maxAmps: channel.maxAmps,
       chargeTitle: running.get(channel.id) ?? null,
     })),
+    next: nextPlanned(cards),
     openToday: opening === null ? null : { from: toInstant(opening.from), to: toInstant(opening.to) },
   };
+}
+
+/** What comes first of what is only planned. */
+function nextPlanned(cards: readonly ChargeCardDto[]): BoardDto['next'] {
+  const planned = cards.filter((card) => card.stage === 'planned');
+  const first = planned.sort((a, b) => Date.parse(a.clipOnAt) - Date.parse(b.clipOnAt))[0];
+  return first ? { title: first.title, clipOnAt: first.clipOnAt, channelNames: first.channelNames } : null;
 }

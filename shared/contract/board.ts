@@ -15,6 +15,8 @@ export interface BoardDto {
   workshop: { id: string; name: string; zone: string };
   charges: ChargeCardDto[];
   channels: BoardChannelDto[];
+  /** The soonest charge that is only planned: what comes first while the bench is empty. */
+  next: { title: string; clipOnAt: Instant; channelNames: string[] } | null;
   /** Night dimming of the wall outside these hours today; null: closed today. */
   openToday: { from: Instant; to: Instant } | null;
 }

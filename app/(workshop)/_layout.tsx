@@ -1,0 +1,89 @@
+import { Stack, usePathname, useRouter, type Href } from 'expo-router';
+import { useEffect, useMemo } from 'react';
+import { useAlarmBell } from '@/shared/client/alarm-bell';
+import { isOpen, useAlerts, useOpenAlertCount } from '@/shared/client/alerts';
+import { useLink } from '@/shared/client/link';
+import { startLive } from '@/shared/client/live';
+import { useNotices } from '@/shared/client/notices';
+import { useReadingQueueRunner, useWaitingReadingCount } from '@/shared/client/reading-queue';
+import { useCan, useSession } from '@/shared/client/session';
+import { clock } from '@/shared/ui/format/clock';
+import { useFormats } from '@/shared/ui/format/formats';
+import { AlertRegion } from '@/shared/ui/primitives/live-region';
+import { OfflineStrip } from '@/shared/ui/primitives/offline-strip';
+import type { NavItem } from '@/shared/ui/screen/nav-items';
+import { AppFrame } from '@/shared/ui/screen/screen';
+import { ShellStrip } from '@/shared/ui/screen/shell-strip';
+import { SideRail } from '@/shared/ui/screen/side-rail';
+import { TabBar } from '@/shared/ui/screen/tab-bar';
+import { NoticePrompt } from '@/shared/ui/shell/notice-prompt';
+import { placeOf, railItems, tabItems, titles } from '@/shared/ui/shell/places';
+import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+
+export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
+
+/** The shell around every screen of the workshop: places, connection, alerts. */
+export default function WorkshopLayout() {
+  const router = useRouter();
+  const path = usePathname();
+  const name = useSession().data?.person.name ?? '';
+  const alerts = useOpenAlertCount();
+  const seesWaits = useCan('waits:read');
+  const notices = useNotices((url) => router.navigate(url as Href));
+
+  // The socket comes after the first paint.
+  useEffect(() => startLive('member'), []);
+  useAlarmBell();
+  useReadingQueueRunner();
+
+  const place = placeOf(path);
+  const go = ({ href }: NavItem) => router.navigate(href as Href);
+  return (
+    <AppFrame
+      rail={
+        <SideRail
+          items={railItems({ alerts, seesWaits })}
+          current={place.rail}
+          onGo={go}
+          person={{ key: 'more', title: name.split(' ')[0] || 'You', icon: 'person', href: '/more' }}
+        />
+      }
+      tabs={place.tab ? <TabBar items={tabItems({ alerts })} current={place.tab} onGo={go} /> : undefined}
+    >
+      <ShellStrip.Provider value={<Strip />}>
+        <Stack
+          screenOptions={({ route }) => ({
+            headerShown: false,
+            animation: 'none',
+            title: titles[route.name] ?? 'Bidewell',
+          })}
+        />
+      </ShellStrip.Provider>
+      <Announcer />
+      <NoticePrompt {...notices} />
+    </AppFrame>
+  );
+}
+
+/** Under the header of the screen while there is no connection. */
+function Strip() {
+  const { state, since } = useLink();
+  const waiting = useWaitingReadingCount();
+  const { zone, marks } = useFormats();
+  const phone = useBreakpoint() === 'phone';
+  if (state !== 'down' || since === null) return null;
+  return <OfflineStrip since={clock(since, zone, marks)} waiting={waiting} device={phone ? 'phone' : 'device'} />;
+}
+
+/** Reads each new alert out, once. */
+function Announcer() {
+  const alerts = useAlerts().data;
+  const words = useMemo(
+    () =>
+      (alerts ?? [])
+        .filter(isOpen)
+        .map(({ id, title, seen, checkFirst }) => ({ id, text: [title, seen, checkFirst].join(' ') })),
+    [alerts],
+  );
+  return alerts ? <AlertRegion alerts={words} /> : null;
+}

@@ -1,0 +1,71 @@
+import { useCallback, useEffect, useState } from 'react';
+import { useStore } from './external-store';
+import type { NoticePermission } from './notice-types';
+import { askNoticePermission, noticePermission, onNoticeOpened, showNotice } from './notify';
+import { started } from './notify-state';
+import { prefer, usePreferences } from './preferences';
+
+export interface Notices {
+  permission: NoticePermission | null;
+  /** The moment to ask: the first charge was started here, and nobody was asked yet. */
+  askNow: boolean;
+  /** A person said yes to our own question: the system's question follows. */
+  ask: () => Promise<NoticePermission>;
+  /** Not now: not asked again by itself; the switch stays in More. */
+  decline: () => void;
+  /** Shows one to see that they come; false where none was shown. */
+  test: () => Promise<boolean>;
+}
+
+/** Whether this device may tell what happens while the page is not looked at, and when to ask. */
+export function useNotices(open?: (url: string) => void): Notices {
+  const [permission, setPermission] = useState<NoticePermission | null>(null);
+  const { noticeAsked } = usePreferences();
+  const startedOne = useStore(started);
+
+  useEffect(() => {
+    let gone = false;
+    void noticePermission().then((now) => {
+      if (!gone) setPermission(now);
+    });
+    return () => {
+      gone = true;
+    };
+  }, []);
+
+  useEffect(() => {
+    if (!open || permission !== 'granted') return;
+    let stop: (() => void) | null = null;
+    let gone = false;
+    void onNoticeOpened(open).then((off) => {
+      if (gone) off();
+      else stop = off;
+    });
+    return () => {
+      gone = true;
+      stop?.();
+    };
+  }, [open, permission]);
+
+  return {
+    permission,
+    askNow: startedOne && permission === 'default' && !noticeAsked,
+    ask: useCallback(async () => {
+      prefer({ noticeAsked: true });
+      const answer = await askNoticePermission();
+      setPermission(answer);
+      return answer;
+    }, []),
+    decline: useCallback(() => prefer({ noticeAsked: true }), []),
+    test: useCallback(
+      () =>
+        showNotice({
+          title: 'Bidewell tells you here',
+          body: 'So it looks when a charge of yours is done.',
+          url: '/alerts',
+          tag: 'test',
+        }),
+      [],
+    ),
+  };
+}
