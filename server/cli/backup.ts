@@ -4,11 +4,11 @@ import path from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { backUp } from '../back-up';
 import { readConfig } from '../config';
-import { databaseFile } from '../data-files';
+import { backupFolder, databaseFile } from '../data-files';
 
 async function main(): Promise<void> {
   const { dataDir } = readConfig({ BIDEWELL_DATA: process.env.BIDEWELL_DATA });
-  const folder = path.resolve(process.argv[2] ?? path.join(dataDir, 'backups'));
+  const folder = path.resolve(process.argv[2] ?? backupFolder(dataDir));
   const file = await backUp(databaseFile(dataDir), folder, new Date());
   const mebibytes = (fs.statSync(file).size / 1024 / 1024).toFixed(1);
   console.log(`bidewell: ${file} (${mebibytes} MiB, checked)`);
