@@ -22,4 +22,5 @@ export { inverseNormal } from './statistics/inverse-normal';
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
 export { judgeCheck } from './plan/judge-check';
+export { reckonCharge } from './live/reckon-charge';
 export { quickEstimate, type QuickEstimate, type QuickNumbers, type QuickWay } from './plan/estimate';

@@ -10,6 +10,7 @@ import type {
   WorkshopParameters,
   ChannelParameters,
   ResistorParameters,
+  Spreads,
 } from './plan-types';
 
 /** A reading while the charge runs or rests. */
@@ -50,6 +51,8 @@ export interface ReckonInput {
   nowS: number;
   seed: number;
   samples?: number;
+  /** Standard deviations that stand in place of the defaults, as in the plan. */
+  spreads?: Partial<Spreads>;
 }
 
 export interface Reckoning {
@@ -80,4 +83,9 @@ export interface Reckoning {
   /** What the plan expects at the instant of the last reading, to stand beside it; null without one. */
   expected: { s: number; terminalVolts: number; amps: number; celsius: number } | null;
   dominant: Doubt;
+  /**
+   * How likely a reading between the clips this far from the reckoned volts is, by the samples and the meters: 0…1, the last
+   * one with volts and amps; null without one. Below some hundredths no sample explains it.
+   */
+  readingChance: number | null;
 }

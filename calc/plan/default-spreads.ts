@@ -3,11 +3,11 @@
  *
  * The shares come from worked error budgets (5 % capacity, 3 mV a reading, 4 mV on the table, 1 % current, 20 %
  * resistance give the 5 to 95 % band the tests compare with); the split by source is common practice: what was
- * measured here is trusted three times as far as a label, a guess half as far as a label.
+ * measured here is trusted twice as far as a label, a guess half as far as a label.
  */
 import type { ModuleParameters, NumberSource, ResistanceKind, Spreads } from '../plan-types';
 
-export const CAPACITY_RELATIVE_SD: Record<NumberSource, number> = { measured: 0.02, label: 0.06, guessed: 0.12 };
+export const CAPACITY_RELATIVE_SD: Record<NumberSource, number> = { measured: 0.03, label: 0.06, guessed: 0.12 };
 
 /** A typed resistance is as good as its way to the long one; nothing typed is the chemistry's guess. */
 export const RESISTANCE_RELATIVE_SD: Record<ResistanceKind | 'guessed', number> = {

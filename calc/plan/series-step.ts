@@ -2,16 +2,16 @@ import { chargeThroughTerminals } from '../charge-through-terminals';
 import { voltsAtSoc } from '../curve/ocv';
 import type { ChannelParameters, Finish, StepKind, Way } from '../plan-types';
 import type { CellGroup, Direction, StepResult } from '../types';
-import { currentSeconds, type CurrentLaw } from './current-seconds';
+import { chargerSd, sampleRun } from './sample-run';
 import type { DraftStep, NotPossible } from './draft';
 import type { PlanModel } from './plan-model';
 import type { Sample } from './samples';
 import { settleSource, type SourceSettings } from './source-settings';
-import { ampHoursToFirst, ampHoursToVolts, stringCharge, stringVolts, type StringCharge } from './string-charge';
+import { stringCharge, type StringCharge } from './string-charge';
 import { ampsText, groupText, limitText, millivoltsText } from './words';
 
-/** The least current of a sample that would never end, as a share of the set one. */
-const LEAST_SHARE = 0.01;
+/** An end current below this cannot be read off any charger, A. */
+const LEAST_END_AMPS = 1e-4;
 
 export interface SeriesStepInput {
   model: PlanModel;
@@ -109,7 +109,25 @@ function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: S
   const joined = groups.length === 1 && groupIndexes.length > 1;
   const socAfter = [...input.socBefore];
   groupIndexes.forEach((group, at) => (socAfter[group] = result.groups[joined ? 0 : at]!.soc));
-  const run = sampleRun(input, settings, sign, finish);
+  const { source, setVolts } = settings;
+  const { channel, aimVolts } = input;
+  const ohm = source.leadResistanceOhm + input.linkOhm + input.stringIn(model.nominal).ohm;
+  const markVolts = Math.max(input.markVolts, channel.minAmps * ohm);
+  const run = sampleRun({
+    model,
+    source,
+    sign,
+    count: groups.length,
+    linkOhm: input.linkOhm,
+    chargerSd: chargerSd(model, channel, groups.length),
+    aimVolts,
+    first: input.first,
+    endAmps:
+      finish === 'on-the-mark' && setVolts !== null
+        ? Math.max((sign * (setVolts - aimVolts) + markVolts) / ohm, LEAST_END_AMPS)
+        : null,
+    stringIn: input.stringIn,
+  });
   const quadrature = run(model.nominal).seconds;
   const scale = quadrature > 0 ? result.stopAtS / quadrature : 0;
   return {
@@ -135,60 +153,6 @@ function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: S
     capVolts: settings.capVolts,
     secondsIn: (sample) => run(sample).seconds * scale,
     ampHoursIn: (sample) => run(sample).ampHours,
-  };
-}
-
-/**
- * The same step in one sample, by quadrature: until the sample's own target (over and settle), or until the current has
- * fallen as far as it falls at the nominal end (on the mark: the charger's voltmeter decides, and people go by the amps).
- */
-function sampleRun(
-  input: SeriesStepInput,
-  settings: SourceSettings,
-  sign: 1 | -1,
-  finish: Finish,
-): (sample: Sample) => { seconds: number; ampHours: number } {
-  const { aimVolts, model, channel, groups } = input;
-  const { source, setVolts } = settings;
-  const count = groups.length;
-  const known = new WeakMap<Sample, { seconds: number; ampHours: number }>();
-  const leadOhm = source.leadResistanceOhm + input.linkOhm;
-  const chargerSd =
-    model.input.spreads?.chargerVolts === undefined && channel.offsetSdVolts !== null
-      ? channel.offsetSdVolts
-      : model.spreads.chargerVolts * count;
-  const nominalOhm = leadOhm + input.stringIn(model.nominal).ohm;
-  const markVolts = Math.max(input.markVolts, channel.minAmps * nominalOhm);
-  const endAmps =
-    finish === 'on-the-mark' && setVolts !== null
-      ? Math.max((sign * (setVolts - aimVolts) + markVolts) / nominalOhm, 1e-4)
-      : null;
-  return (sample) => {
-    const before = known.get(sample);
-    if (before) return before;
-    const { string, ohm } = input.stringIn(sample);
-    const maxAmps = (source.maxAmps ?? Infinity) * sample.currentFactor;
-    const law: CurrentLaw = {
-      openVolts: (ampHours) => stringVolts(string, ampHours),
-      sign,
-      maxAmps,
-      setVolts: setVolts === null ? null : setVolts + count * sample.curveShiftVolts + chargerSd * sample.chargerDraw,
-      maxWatts: source.maxWatts,
-      resistanceOhm: ohm + leadOhm,
-      loadOhm: source.loadOhm,
-      leastAmps: endAmps ?? (source.maxAmps ?? 1) * LEAST_SHARE,
-    };
-    const goal =
-      endAmps !== null && law.setVolts !== null
-        ? law.setVolts - sign * endAmps * law.resistanceOhm
-        : aimVolts + count * sample.targetShiftVolts;
-    const ampHours =
-      input.first && endAmps === null
-        ? Math.max(0, ampHoursToFirst(string, sample.targetSoc))
-        : ampHoursToVolts(string, goal);
-    const found = { seconds: currentSeconds(law, ampHours), ampHours };
-    known.set(sample, found);
-    return found;
   };
 }
 

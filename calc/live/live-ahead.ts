@@ -1,0 +1,108 @@
+import type { PlanOption } from '../plan-types';
+import type { PlanModel } from '../plan/plan-model';
+import type { Sample } from '../plan/samples';
+import { AS_SET, type Drive } from './lane';
+import { liveSampleRun, type MovedIn } from './live-samples';
+import type { LivePast, LiveRound } from './live-rounds';
+import type { ModuleState } from './module-state';
+
+/** One lane's current still to come, seconds. */
+export interface LaneAhead {
+  stepIndex: number;
+  seconds: number;
+  /** When a voltage limit begins to rule, seconds from its start; null: never. */
+  taperAfterS: number | null;
+  secondsIn: (sample: Sample) => number;
+}
+
+/** A round still to come, or what is left of the one that runs. */
+export interface RoundAhead {
+  /** Hands between the end of the round before (or now) and its first current, s. */
+  handsS: number;
+  lanes: LaneAhead[];
+}
+
+export interface Ahead {
+  rounds: RoundAhead[];
+  /** At the nominal end of all currents, as far as the model runs it: of the round that runs now. */
+  endState: ModuleState;
+  /** Charge still to come, as the option counts it, Ah. */
+  ampHours: number;
+}
+
+/** What is still to come of a charge: the rest of the running round by the core from its present state, then the planned ones. */
+export function liveAhead(model: PlanModel, option: PlanOption, past: LivePast): Ahead {
+  const current = past.begun[past.begun.length - 1];
+  const ahead: Ahead = { rounds: [], endState: past.state, ampHours: 0 };
+  let moved: MovedIn = (_, group) => past.movedAh[group]!;
+  const begun = past.begun.length;
+  if (current && current.endedAtS === null) {
+    const left = restOfRound(model, option, past, current, moved);
+    ahead.rounds.push({ handsS: 0, lanes: left.lanes });
+    ahead.endState = left.state;
+    ahead.ampHours += left.ampHours;
+    moved = left.moved;
+  }
+  past.rounds.forEach((steps, round) => {
+    if (round < begun) return;
+    const lanes = steps.map((at): LaneAhead => {
+      const step = option.steps[at]!;
+      const run = liveSampleRun(model, option, step, moved, AS_SET);
+      const nominal = run(model.nominal).seconds;
+      const seconds = step.stopS - step.startS;
+      ahead.ampHours += step.kind === 'pre-level' ? 0 : step.ampHours;
+      return {
+        stepIndex: at,
+        seconds,
+        taperAfterS: step.voltageLimitAtS === null ? null : step.voltageLimitAtS - step.startS,
+        secondsIn: (sample) => (nominal > 0 ? (run(sample).seconds * seconds) / nominal : seconds),
+      };
+    });
+    const before = past.rounds[round - 1];
+    const first = option.steps[steps[0]!]!;
+    const handsS = before ? first.startS - Math.max(...before.map((at) => option.steps[at]!.stopS)) : 0;
+    ahead.rounds.push({ handsS, lanes });
+  });
+  return ahead;
+}
+
+function restOfRound(
+  model: PlanModel,
+  option: PlanOption,
+  past: LivePast,
+  round: LiveRound,
+  moved: MovedIn,
+): { lanes: LaneAhead[]; state: ModuleState; ampHours: number; moved: MovedIn } {
+  const soc = [...past.state.soc];
+  const over = [...past.state.over];
+  let ampHours = 0;
+  let after = moved;
+  const lanes = round.lanes.map((lane, at): LaneAhead => {
+    const one = round.pasts[at]!;
+    if (one.endedAtS !== null || one.overrun)
+      return { stepIndex: lane.index, seconds: 0, taperAfterS: null, secondsIn: () => 0 };
+    const drive: Drive = one.noCurrent ? AS_SET : one.drive;
+    const left = lane.forward(past.state, drive, null);
+    for (const group of lane.touched) {
+      soc[group] = left.state.soc[group]!;
+      over[group] = left.state.over[group]!;
+    }
+    if (lane.step.kind !== 'pre-level') ampHours += left.ampHours;
+    const run = liveSampleRun(model, option, lane.step, moved, drive);
+    const nominal = run(model.nominal).seconds;
+    // A resistor's run is that of its whole step; of a charger's it is what is left.
+    const whole = lane.step.channelIds.length === 0 ? lane.step.stopS - lane.step.startS : nominal;
+    const before = after;
+    // Levelling passes charge from group to group: nothing comes in.
+    const counts = lane.step.kind !== 'pre-level';
+    after = (sample, group) =>
+      before(sample, group) + (counts && lane.step.groupIndexes.includes(group) ? lane.sign * run(sample).ampHours : 0);
+    return {
+      stepIndex: lane.index,
+      seconds: left.seconds,
+      taperAfterS: left.taperAfterS,
+      secondsIn: (sample) => (whole > 0 ? (run(sample).seconds * left.seconds) / whole : left.seconds),
+    };
+  });
+  return { lanes, state: { s: past.state.s, soc, over }, ampHours, moved: after };
+}

@@ -1,0 +1,199 @@
+import type { LiveReading } from '../live-types';
+import type { PlanModel } from '../plan/plan-model';
+import { AS_SET, type Drive, type Lane } from './lane';
+import { rested, type ModuleState } from './module-state';
+
+/** A stretch in which current may flow, both ends known. */
+export interface Stretch {
+  fromS: number;
+  toS: number;
+}
+
+/** Readings of the current on one lane, positive amps. */
+export interface AmpsReading {
+  s: number;
+  amps: number;
+  terminalVolts: number | null;
+}
+
+export interface LanePast {
+  state: ModuleState;
+  /** End of current, s; null: not yet. */
+  endedAtS: number | null;
+  /** From when a voltage limit ruled, s; null: not so far. */
+  taperAtS: number | null;
+  /** At the terminals, positive, Ah. */
+  deliveredAh: number;
+  /** Positive, at the end of the last stretch. */
+  amps: number;
+  drive: Drive;
+  /** The last reading showed no current while some was due. */
+  noCurrent: boolean;
+  /** The last reading showed current after the reckoned end. */
+  overrun: boolean;
+}
+
+/** Below this share of the set current, or of the planned end current, a reading says that none flows. */
+const ZERO_OF_SET = 0.01;
+const ZERO_OF_END = 0.5;
+/** On the mark trickles on after its end: up to this multiple of the planned end current nothing is wrong. */
+const TRICKLE = 1.5;
+/** A model current this near to the set one is constant current. */
+const CONSTANT_SHARE = 0.97;
+
+/**
+ * What one lane's current has done to the module until `nowS`.
+ *
+ * Between two readings of the current the charge is the trapezium, or in a taper the logarithmic mean from where the model has
+ * it begin; the first reading of a stretch counts back to its start; after the last one the model runs on with what that
+ * reading has shown. Without readings it is the model as set.
+ */
+export function lanePast(
+  model: PlanModel,
+  lane: Lane,
+  start: ModuleState,
+  stretches: Stretch[],
+  readings: AmpsReading[],
+  nowS: number,
+): LanePast {
+  const past: LanePast = {
+    state: start,
+    endedAtS: null,
+    taperAtS: null,
+    deliveredAh: 0,
+    amps: 0,
+    drive: AS_SET,
+    noCurrent: false,
+    overrun: false,
+  };
+  for (const { fromS, toS } of stretches) {
+    const endS = Math.min(toS, nowS);
+    if (fromS > endS) continue;
+    past.state = restTouched(model, lane, past.state, fromS);
+    past.noCurrent = false;
+    let before: number | null = null;
+    for (const reading of readings.filter(({ s }) => s >= fromS && s <= endS)) {
+      takeReading(model, lane, past, before, reading);
+      before = reading.amps;
+    }
+    runOn(model, lane, past, endS);
+  }
+  past.state = restTouched(model, lane, past.state, nowS);
+  return past;
+}
+
+const restTouched = (model: PlanModel, lane: Lane, state: ModuleState, toS: number): ModuleState =>
+  rested(model, state, toS, lane.touched);
+
+function takeReading(model: PlanModel, lane: Lane, past: LanePast, before: number | null, reading: AmpsReading): void {
+  const { s, amps } = reading;
+  const zero = amps <= zeroBelow(lane);
+  const trickle = lane.step.setVolts !== null && amps <= Math.abs(lane.step.endAmps) * TRICKLE;
+  const seconds = s - past.state.s;
+  if (past.endedAtS !== null && (zero || trickle)) {
+    past.state = restTouched(model, lane, past.state, s);
+    past.overrun = false;
+    return;
+  }
+  const ahead = lane.forward(past.state, past.drive, Math.max(seconds, 0));
+  if (zero && ahead.ended && past.endedAtS === null && before !== 0) {
+    // It came to its end between two looks, and somebody has switched it off.
+    end(model, lane, past, ahead.seconds, ahead.state, ahead.ampHours, ahead.taperAfterS);
+    past.state = restTouched(model, lane, past.state, s);
+    return;
+  }
+  const tapering = ahead.taperAfterS !== null && ahead.taperAfterS < seconds;
+  if (before === null && tapering && !ahead.ended) {
+    // Nobody has looked before the taper: the model's course up to here stands.
+    note(past, ahead.taperAfterS, ahead.ampHours);
+    past.state = ahead.state;
+  } else {
+    const from = before ?? amps;
+    const constantS = tapering && amps < from ? ahead.taperAfterS! : 0;
+    if (tapering) past.taperAtS ??= past.state.s + ahead.taperAfterS!;
+    advance(lane, past, from, from, constantS);
+    const falling = constantS > 0 && amps > 0 && amps < from;
+    advance(lane, past, falling ? 2 * logMean(from, amps) - amps : from, amps, seconds - constantS);
+  }
+  past.amps = amps;
+  past.noCurrent = zero;
+  if (zero) {
+    past.drive = AS_SET;
+    return;
+  }
+  past.drive = driveFrom(lane, past, reading);
+  const there = lane.forward(past.state, past.drive, 0).ended;
+  past.overrun = there && !trickle;
+  past.endedAtS = there && trickle ? (past.endedAtS ?? s) : null;
+}
+
+/** The model from the last reading (or the start) of a stretch to its end. */
+function runOn(model: PlanModel, lane: Lane, past: LanePast, endS: number): void {
+  const seconds = endS - past.state.s;
+  if (past.noCurrent || past.endedAtS !== null) {
+    past.state = restTouched(model, lane, past.state, endS);
+    past.amps = 0;
+    return;
+  }
+  const ahead = lane.forward(past.state, past.drive, Math.max(0, seconds), past.overrun);
+  if (ahead.ended && !past.overrun) {
+    end(model, lane, past, ahead.seconds, ahead.state, ahead.ampHours, ahead.taperAfterS);
+    past.state = restTouched(model, lane, past.state, endS);
+    return;
+  }
+  note(past, ahead.taperAfterS, ahead.ampHours);
+  past.state = ahead.state;
+  past.amps = Math.abs(ahead.amps);
+}
+
+function end(
+  model: PlanModel,
+  lane: Lane,
+  past: LanePast,
+  seconds: number,
+  state: ModuleState,
+  ampHours: number,
+  taperAfterS: number | null,
+): void {
+  past.endedAtS = past.state.s + seconds;
+  note(past, taperAfterS, ampHours);
+  past.state = state;
+  past.amps = 0;
+}
+
+function note(past: LanePast, taperAfterS: number | null, ampHours: number): void {
+  if (taperAfterS !== null) past.taperAtS ??= past.state.s + taperAfterS;
+  past.deliveredAh += ampHours;
+}
+
+function advance(lane: Lane, past: LanePast, fromAmps: number, toAmps: number, seconds: number): void {
+  if (seconds <= 0) return;
+  past.deliveredAh += ((fromAmps + toAmps) / 2) * (seconds / 3600);
+  past.state = lane.moved(past.state, fromAmps, toAmps, seconds);
+}
+
+function driveFrom(lane: Lane, past: LanePast, reading: AmpsReading): Drive {
+  const set = lane.step.setAmps;
+  if (set === null) return lane.driveInTaper(past.state, reading.amps);
+  const byModel = lane.ampsAt(past.state, AS_SET) < set * CONSTANT_SHARE;
+  const byVolts = reading.terminalVolts !== null && lane.atSetVolts(reading.terminalVolts, reading.amps);
+  if (reading.amps < set * CONSTANT_SHARE && (byModel || byVolts)) {
+    past.taperAtS ??= reading.s;
+    return lane.driveInTaper(past.state, reading.amps);
+  }
+  return { maxAmps: reading.amps, setShiftVolts: 0 };
+}
+
+function zeroBelow({ step }: Lane): number {
+  const set = (step.setAmps ?? Math.abs(step.endAmps)) * ZERO_OF_SET;
+  return Math.max(0.005, Math.min(set, Math.abs(step.endAmps) * ZERO_OF_END));
+}
+
+const logMean = (first: number, second: number): number =>
+  Math.abs(first - second) < 1e-9 * first ? first : (first - second) / Math.log(first / second);
+
+/** Readings with amps, as one lane of `shareOf` the current sees them. */
+export const ampsReadings = (readings: readonly LiveReading[], shareOf: number, alone: boolean): AmpsReading[] =>
+  readings.flatMap(({ s, amps, terminalVolts }) =>
+    amps === null ? [] : [{ s, amps: Math.abs(amps) * shareOf, terminalVolts: alone ? terminalVolts : null }],
+  );

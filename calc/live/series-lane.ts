@@ -1,0 +1,185 @@
+import { joinGroups } from '../charge-paralleled';
+import { chargeThroughTerminals } from '../charge-through-terminals';
+import { voltsAtSoc } from '../curve/ocv';
+import type { ChannelParameters, PlannedStep } from '../plan-types';
+import type { PlanModel } from '../plan/plan-model';
+import type { CellGroup, Source } from '../types';
+import type { Drive, Forward, Lane } from './lane';
+import type { ModuleState } from './module-state';
+
+/** On the mark: the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
+const END_AMPS_SHARE = 0.98;
+const LEAST_END_AMPS = 1e-3;
+
+/** A step on a charger or load, run by the core. */
+export function seriesLane(model: PlanModel, step: PlannedStep, index: number, channel: ChannelParameters): Lane {
+  const sign = step.direction === 'charge' ? 1 : -1;
+  const joined = step.way === 'paralleled';
+  const { module } = model.input;
+  const linkOhm = step.way === 'terminals' ? module.linkResistanceOhm : 0;
+  const source = plannedSource(step, channel);
+  const aimVolts = joined
+    ? step.restVoltsAfter[step.groupIndexes[0]!]!
+    : step.groupIndexes.reduce((sum, group) => sum + step.restVoltsAfter[group]!, 0);
+  const groupsOf = (state: ModuleState): CellGroup[] => {
+    const groups = step.groupIndexes.map((group) => ({
+      ...model.groups[group]!,
+      restVolts: voltsAtSoc(model.curve, state.soc[group]!),
+      polarisationVolts: state.over[group]!,
+    }));
+    return joined ? [{ ...joinGroups(groups, model.curve), polarisationVolts: meanOver(state, step) }] : groups;
+  };
+  const driven = (drive: Drive): Source => ({
+    ...source,
+    maxAmps: drive.maxAmps ?? source.maxAmps,
+    setVolts: source.setVolts === null ? null : source.setVolts + drive.setShiftVolts,
+  });
+  const spread = (state: ModuleState, seconds: number, soc: number[], over: number[]): ModuleState => {
+    const next = { s: state.s + seconds, soc: [...state.soc], over: [...state.over] };
+    step.groupIndexes.forEach((group, at) => {
+      next.soc[group] = soc[joined ? 0 : at]!;
+      next.over[group] = over[joined ? 0 : at]!;
+    });
+    return next;
+  };
+  const efficiency = sign > 0 ? model.efficiency : 1;
+
+  const tapers = source.setVolts !== null && endsByAmps(step);
+  const forward = (state: ModuleState, drive: Drive, maxSeconds: number | null, onwards = false): Forward => {
+    const groups = groupsOf(state);
+    const result = chargeThroughTerminals({
+      groups,
+      curve: model.curve,
+      linkResistanceOhm: linkOhm,
+      coulombicEfficiency: model.efficiency,
+      direction: step.direction,
+      source: driven(drive),
+      stop: {
+        relaxedVolts: onwards ? null : aimVolts,
+        toleranceVolts: onwards ? 0 : 1e-9,
+        cutoffAmps: tapers && !onwards ? Math.max(Math.abs(step.endAmps) * END_AMPS_SHARE, LEAST_END_AMPS) : null,
+        groupVolts: null,
+        maxSeconds,
+      },
+      settledVolts: model.settledVolts(groups.length),
+    });
+    // The plan was reachable; a set voltage that a reading has shifted may not be, and then the amps alone are believed.
+    if (result.outcome === 'unreachable' && drive.setShiftVolts !== 0)
+      return forward(state, { maxAmps: drive.maxAmps, setShiftVolts: 0 }, maxSeconds, onwards);
+    const taperAfterS =
+      result.voltageLimitAtS !== null && result.outcome !== 'unreachable' ? result.voltageLimitAtS : null;
+    return {
+      seconds: result.stopAtS,
+      ended: result.outcome !== 'time-cap',
+      taperAfterS,
+      ampHours: result.ampHours,
+      amps: result.endAmps,
+      state:
+        result.outcome === 'unreachable'
+          ? state
+          : spread(
+              state,
+              result.stopAtS,
+              result.groups.map((group) => group.soc),
+              result.groups.map((group) => group.polarisationVolts),
+            ),
+    };
+  };
+
+  const totalOhm = (groups: CellGroup[]): number =>
+    groups.reduce((sum, group) => sum + group.ohmicResistanceOhm, linkOhm + source.leadResistanceOhm);
+  const electromotive = (groups: CellGroup[]): number =>
+    groups.reduce((sum, group) => sum + group.restVolts + (group.polarisationVolts ?? 0), 0);
+
+  return {
+    index,
+    step,
+    sign,
+    touched: step.groupIndexes,
+    forward,
+    ampsAt: (state, drive) => {
+      const groups = groupsOf(state);
+      const { maxAmps, setVolts, maxWatts, loadOhm } = driven(drive);
+      const volts = electromotive(groups);
+      const ohm = totalOhm(groups);
+      const root = maxWatts === null ? 0 : volts * volts + sign * 4 * ohm * maxWatts;
+      const limits = [
+        maxAmps ?? Infinity,
+        setVolts === null ? Infinity : (sign * (setVolts - volts)) / ohm,
+        maxWatts === null || root <= 0 ? Infinity : (2 * maxWatts) / (volts + Math.sqrt(root)),
+        loadOhm === null ? Infinity : volts / (ohm + loadOhm),
+      ];
+      return Math.max(0, Math.min(...limits));
+    },
+    moved: (state, fromAmps, toAmps, seconds) => {
+      if (seconds <= 0) return state;
+      const groups = groupsOf(state);
+      const from = joined ? [joinedSoc(model, state, step)] : step.groupIndexes.map((group) => state.soc[group]!);
+      const ampHours = ((fromAmps + toAmps) / 2) * (seconds / 3600);
+      return spread(
+        state,
+        seconds,
+        groups.map((group, at) => from[at]! + (sign * efficiency * ampHours) / group.capacityAh),
+        groups.map((group) => overAfter(group, sign * fromAmps, sign * toAmps, seconds)),
+      );
+    },
+    clipVolts: (state, amps) => {
+      const groups = groupsOf(state);
+      return (
+        electromotive(groups) + sign * amps * groups.reduce((sum, group) => sum + group.ohmicResistanceOhm, linkOhm)
+      );
+    },
+    atSetVolts: (terminalVolts, amps) =>
+      source.setVolts !== null &&
+      sign * (source.setVolts - terminalVolts) <=
+        amps * source.leadResistanceOhm +
+          Math.max(channel.displayStepVolts, 0.002 * (joined ? 1 : step.groupIndexes.length)),
+    driveInTaper: (state, amps) => {
+      if (!tapers) return { maxAmps: amps, setShiftVolts: 0 };
+      const groups = groupsOf(state);
+      const needed = electromotive(groups) + sign * amps * totalOhm(groups);
+      return { maxAmps: null, setShiftVolts: source.setVolts === null ? 0 : needed - source.setVolts };
+    },
+  };
+}
+
+/** Over-voltage after a current that goes straight from one value to another: the RC branch in closed form. */
+function overAfter(group: CellGroup, fromAmps: number, toAmps: number, seconds: number): number {
+  const { polarisationResistanceOhm: ohm, polarisationTimeConstantS: tau } = group;
+  if (!(tau > 0)) return 0;
+  const slope = (toAmps - fromAmps) / seconds;
+  const decay = Math.exp(-seconds / tau);
+  const lag = ohm * slope * tau;
+  return ((group.polarisationVolts ?? 0) - ohm * fromAmps + lag) * decay + ohm * toAmps - lag;
+}
+
+/** Groups that are joined share their charge. */
+function joinedSoc(model: PlanModel, state: ModuleState, step: PlannedStep): number {
+  let charge = 0;
+  let capacity = 0;
+  for (const group of step.groupIndexes) {
+    charge += state.soc[group]! * model.groups[group]!.capacityAh;
+    capacity += model.groups[group]!.capacityAh;
+  }
+  return charge / capacity;
+}
+
+function meanOver(state: ModuleState, step: PlannedStep): number {
+  return step.groupIndexes.reduce((sum, group) => sum + state.over[group]!, 0) / step.groupIndexes.length;
+}
+
+/** A step that was planned to end in a taper and not in constant current. */
+function endsByAmps(step: PlannedStep): boolean {
+  return step.voltageLimitAtS !== null && step.setAmps !== null && Math.abs(step.endAmps) < step.setAmps * 0.9;
+}
+
+function plannedSource(step: PlannedStep, channel: ChannelParameters): Source {
+  return {
+    maxAmps: step.setAmps ?? channel.dischargeAmps,
+    setVolts: step.setVolts,
+    maxWatts: channel.maxWatts,
+    leadResistanceOhm: channel.senses === 'module' ? 0 : channel.leadResistanceOhm,
+    heldGroupVolts: null,
+    loadOhm: step.direction === 'discharge' ? channel.loadOhm : null,
+  };
+}

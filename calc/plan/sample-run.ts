@@ -1,0 +1,76 @@
+import type { ChannelParameters } from '../plan-types';
+import type { Source } from '../types';
+import { currentSeconds, type CurrentLaw } from './current-seconds';
+import type { PlanModel } from './plan-model';
+import type { Sample } from './samples';
+import { ampHoursToFirst, ampHoursToVolts, stringVolts, type StringCharge } from './string-charge';
+
+/** The least current of a sample that would never end, as a share of the set one. */
+const LEAST_SHARE = 0.01;
+
+export interface SampleRunInput {
+  model: PlanModel;
+  source: Source;
+  sign: 1 | -1;
+  /** Groups in series between the clips. */
+  count: number;
+  linkOhm: number;
+  /** Standard deviation of the charger's voltmeter, V between the clips. */
+  chargerSd: number;
+  /** Summed rest voltage aimed at, as the target's meter reads it. */
+  aimVolts: number;
+  /** Ends when the first group is at the target, and not by the sum. */
+  first: boolean;
+  /** Current at which a taper ends; null: ends at the target. */
+  endAmps: number | null;
+  /** The string between the clips where the current begins, in one sample. */
+  stringIn: (sample: Sample) => { string: StringCharge; ohm: number };
+}
+
+/** Seconds and ampere-hours of current in one sample. */
+export type SampleRun = (sample: Sample) => { seconds: number; ampHours: number };
+
+/**
+ * One step in one sample, by quadrature: until the sample's own target (over and settle), or until the current has fallen as
+ * far as it falls at the nominal end (on the mark: the charger's voltmeter decides, and people go by the amps).
+ */
+export function sampleRun(input: SampleRunInput): SampleRun {
+  const { source, sign, count, aimVolts, endAmps } = input;
+  const known = new WeakMap<Sample, { seconds: number; ampHours: number }>();
+  return (sample) => {
+    const before = known.get(sample);
+    if (before) return before;
+    const { string, ohm } = input.stringIn(sample);
+    const law: CurrentLaw = {
+      openVolts: (ampHours) => stringVolts(string, ampHours),
+      sign,
+      maxAmps: (source.maxAmps ?? Infinity) * sample.currentFactor,
+      setVolts:
+        source.setVolts === null
+          ? null
+          : source.setVolts + count * sample.curveShiftVolts + input.chargerSd * sample.chargerDraw,
+      maxWatts: source.maxWatts,
+      resistanceOhm: ohm + source.leadResistanceOhm + input.linkOhm,
+      loadOhm: source.loadOhm,
+      leastAmps: endAmps ?? (source.maxAmps ?? 1) * LEAST_SHARE,
+    };
+    const goal =
+      endAmps !== null && law.setVolts !== null
+        ? law.setVolts - sign * endAmps * law.resistanceOhm
+        : aimVolts + count * sample.targetShiftVolts;
+    const ampHours =
+      input.first && endAmps === null
+        ? Math.max(0, ampHoursToFirst(string, sample.targetSoc))
+        : ampHoursToVolts(string, goal);
+    const found = { seconds: currentSeconds(law, ampHours), ampHours };
+    known.set(sample, found);
+    return found;
+  };
+}
+
+/** What a channel's own voltmeter may be off, V between the clips: as checked, else the default a group. */
+export function chargerSd(model: PlanModel, channel: ChannelParameters, count: number): number {
+  const asked = model.input.spreads?.chargerVolts;
+  if (asked !== undefined) return asked * count;
+  return channel.offsetSdVolts ?? model.spreads.chargerVolts * count;
+}
