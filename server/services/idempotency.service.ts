@@ -80,7 +80,7 @@ export async function once(
           key,
           bodyHash,
           status: withoutAnswer,
-          response: null,
+          response: { body: null },
           createdAt: now,
         });
       },
@@ -89,7 +89,7 @@ export async function once(
     await idempotencyContext.exit(() =>
       inTransaction(deps, async (manager) => {
         if (!write.recorded) await write.record(manager);
-        await storeAnswer(manager, workshopId, id, answer.status, answer.body ?? null);
+        await storeAnswer(manager, workshopId, id, answer.status, { body: answer.body ?? null });
       }),
     );
     write.recorded = true; // Whatever the request has set going writes no key any more.
@@ -100,6 +100,7 @@ export async function once(
 }
 
 function replay(stored: { bodyHash: string; status: number; response: unknown }, bodyHash: string): Answer {
+  const { body } = stored.response as { body: unknown };
   if (stored.bodyHash !== bodyHash)
     throw new DomainError(
       422,
@@ -112,5 +113,5 @@ function replay(stored: { bodyHash: string; status: number; response: unknown },
       'done_already',
       'This was done already, and its answer was lost. Read how it stands now.',
     );
-  return { status: stored.status, body: stored.response ?? undefined };
+  return { status: stored.status, body: body ?? undefined };
 }
