@@ -43,7 +43,7 @@ async function makeLink(
     usedAt: null,
     recalledAt: null,
   });
-  return { url: `${baseUrl}/${link.kind}/${token}`, expiresAt: toInstant(expiresAt) };
+  return { url: `${baseUrl}/join?token=${token}`, expiresAt: toInstant(expiresAt) };
 }
 
 /** @throws DomainError 409 where the address already belongs to somebody of this workshop */

@@ -73,7 +73,7 @@ export async function askForCode(
     });
     return code;
   });
-  const verificationUrl = `${input.baseUrl}/walls/approve`;
+  const verificationUrl = `${input.baseUrl}/approve`;
   return {
     deviceCode,
     userCode: shown,
