@@ -3,9 +3,9 @@ import { buildWhatIsStale } from './build.mjs';
 import { ensureChromium, ensureInstalled } from './install.mjs';
 import { fromRoot, runOrExit } from './tools.mjs';
 
-ensureInstalled();
-const chromium = ensureChromium();
+await ensureInstalled();
+const chromium = await ensureChromium();
 await buildWhatIsStale();
-runOrExit(process.execPath, ['--import', 'tsx', fromRoot('tests/bench/index.ts'), ...process.argv.slice(2)], {
+await runOrExit(process.execPath, ['--import', 'tsx', fromRoot('tests/bench/index.ts'), ...process.argv.slice(2)], {
   BIDEWELL_CHROMIUM: chromium ?? '',
 });

@@ -69,7 +69,7 @@ async function buildWeb() {
   fs.rmSync(fresh, { recursive: true, force: true });
   const chunkList = fromRoot('node_modules/.cache/bidewell-chunks.json');
   fs.rmSync(chunkList, { force: true });
-  runOrExit(
+  await runOrExit(
     process.execPath,
     [fromRoot('node_modules/expo/bin/cli'), 'export', '-p', 'web', '--output-dir', 'dist-fresh'],
     { ...webEnv, BIDEWELL_CHUNK_LIST: chunkList },
@@ -159,6 +159,6 @@ export async function buildWhatIsStale() {
 }
 
 if (import.meta.url === pathToFileURL(process.argv[1]).href) {
-  ensureInstalled();
+  await ensureInstalled();
   await buildWhatIsStale();
 }

@@ -2,7 +2,7 @@
 import { ensureInstalled } from './install.mjs';
 import { fromRoot, run, say } from './tools.mjs';
 
-ensureInstalled();
+await ensureInstalled();
 const steps = [
   ['types', [fromRoot('server/cli/typecheck.mjs')]],
   ['lint', [fromRoot('node_modules/eslint/bin/eslint.js'), '.', '--max-warnings', '0']],
@@ -11,9 +11,9 @@ const steps = [
 const failed = [];
 for (const [name, args] of steps) {
   say(`checking ${name}`);
-  if (run(process.execPath, args) !== 0) failed.push(name);
+  if ((await run(process.execPath, args)) !== 0) failed.push(name);
 }
 // The tests run in any case: their closing line is the last thing said.
 if (failed.length > 0) say(`FAILED before the tests: ${failed.join(', ')}`);
-const tests = run(process.execPath, [fromRoot('server/cli/test.mjs')]);
+const tests = await run(process.execPath, [fromRoot('server/cli/test.mjs')]);
 process.exit(failed.length > 0 ? 1 : tests);

@@ -5,7 +5,7 @@ import { ensureInstalled } from './install.mjs';
 import { fromRoot, say } from './tools.mjs';
 
 const metroPort = '8099';
-ensureInstalled();
+await ensureInstalled();
 
 const env = {
   ...process.env,

@@ -30,14 +30,14 @@ function installedAsLocked() {
 }
 
 /** Installs the packages when node_modules is missing or differs from package-lock.json; ends the process when that fails. */
-export function ensureInstalled() {
+export async function ensureInstalled() {
   requireNode();
   if (installedAsLocked()) return;
   const compiler = (onPath('g++') || onPath('c++')) && onPath('make') && onPath('python3');
   if (!compiler) say(`SQLite may have to be compiled here, and a compiler is missing. Where it stops: ${compilerLine}`);
   say('installing packages (some minutes the first time)');
   // --include=dev: the build tools stand under devDependencies, and NODE_ENV=production would leave them out.
-  const status = run('npm', ['ci', '--include=dev', '--no-audit', '--no-fund']);
+  const status = await run('npm', ['ci', '--include=dev', '--no-audit', '--no-fund']);
   if (status === 0) return;
   console.error(
     compiler
@@ -51,14 +51,14 @@ export function ensureInstalled() {
  * The path of a Chromium for the tests that need a browser; installs Debian's where this is Debian and we are root.
  * Null where there is none: the caller says which tests did not run.
  */
-export function ensureChromium() {
+export async function ensureChromium() {
   const there = chromiumPath();
   if (there || process.env.BIDEWELL_CHROMIUM) return there;
   const mayInstall = process.getuid?.() === 0 && fs.existsSync('/etc/debian_version') && onPath('apt-get');
   if (!mayInstall) return null;
   say('installing Debian’s Chromium for the tests in a browser');
   const quiet = { DEBIAN_FRONTEND: 'noninteractive' };
-  run('apt-get', ['update', '-qq'], quiet);
-  run('apt-get', ['install', '-y', '-qq', '--no-install-recommends', 'chromium'], quiet);
+  await run('apt-get', ['update', '-qq'], quiet);
+  await run('apt-get', ['install', '-y', '-qq', '--no-install-recommends', 'chromium'], quiet);
   return chromiumPath();
 }

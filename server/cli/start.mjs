@@ -10,7 +10,7 @@ import { fromRoot, runAndFollow, say } from './tools.mjs';
 const defaultPort = '4300'; // as in server/config.ts
 const { env } = process;
 
-ensureInstalled();
+await ensureInstalled();
 await buildWhatIsStale();
 
 const port = env.PORT || defaultPort;

@@ -10,10 +10,10 @@ const reports = fromRoot('node_modules/.cache/bidewell-tests');
 const filters = process.argv.slice(2);
 
 /** Runs some of the projects of vitest.config.ts; gives the counts out of vitest's own report. */
-function runProjects(name, projects, env) {
+async function runProjects(name, projects, env) {
   const report = path.join(reports, `${name}.json`);
   fs.rmSync(report, { force: true });
-  const status = run(
+  const status = await run(
     process.execPath,
     [
       fromRoot('node_modules/vitest/vitest.mjs'),
@@ -48,13 +48,13 @@ function loud(lines) {
   console.log([bar, ...lines.map((line) => `!! ${line.padEnd(width)} !!`), bar].join('\n'));
 }
 
-ensureInstalled();
+await ensureInstalled();
 fs.mkdirSync(reports, { recursive: true });
-const chromium = ensureChromium();
+const chromium = await ensureChromium();
 await buildWhatIsStale();
 
-const parts = [runProjects('unit', ['node', 'ui'], { CI: process.env.CI ?? '' })];
-parts.push(runProjects('e2e', ['e2e'], { BIDEWELL_CHROMIUM: chromium ?? '' }));
+const parts = [await runProjects('unit', ['node', 'ui'], { CI: process.env.CI ?? '' })];
+parts.push(await runProjects('e2e', ['e2e'], { BIDEWELL_CHROMIUM: chromium ?? '' }));
 
 if (!chromium) {
   const missing = fs.existsSync(fromRoot('tests/e2e'))

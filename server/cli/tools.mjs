@@ -1,6 +1,6 @@
 // Helpers of the commands in this folder. Plain JavaScript with nothing but Node's own modules: these commands run
 // on a machine where nothing is installed yet, so neither TypeScript nor a package can be counted on.
-import { spawn, spawnSync } from 'node:child_process';
+import { spawn } from 'node:child_process';
 import { createHash } from 'node:crypto';
 import fs from 'node:fs';
 import path from 'node:path';
@@ -14,20 +14,37 @@ export const fromRoot = (...parts) => path.join(root, ...parts);
 /** Prints one line of progress. */
 export const say = (text) => console.log(`bidewell: ${text}`);
 
-/** Runs a command in the repository with its output on this terminal; gives its exit status (1 when it was killed or is missing). */
+/**
+ * Runs a command in the repository with its output on this terminal; gives its exit status (1 when it was killed or is
+ * missing). SIGTERM and SIGINT end the command as well, so that stopping a build leaves nothing running.
+ */
 export function run(command, args, env = {}) {
-  const { status, error } = spawnSync(command, args, {
-    cwd: root,
-    stdio: ['ignore', 'inherit', 'inherit'],
-    env: { ...process.env, ...env },
+  return new Promise((resolve) => {
+    const child = spawn(command, args, {
+      cwd: root,
+      stdio: ['ignore', 'inherit', 'inherit'],
+      env: { ...process.env, ...env },
+    });
+    const stop = (signal) => {
+      child.kill(signal);
+      process.exit(1);
+    };
+    process.on('SIGTERM', stop).on('SIGINT', stop);
+    const end = (status) => {
+      process.off('SIGTERM', stop).off('SIGINT', stop);
+      resolve(status ?? 1);
+    };
+    child.on('error', (error) => {
+      console.error(`bidewell: ${command}: ${error.message}`);
+      end(1);
+    });
+    child.on('exit', end);
   });
-  if (error) console.error(`bidewell: ${command}: ${error.message}`);
-  return status ?? 1;
 }
 
 /** As `run`, but ends this process with the same status when the command fails. */
-export function runOrExit(command, args, env) {
-  const status = run(command, args, env);
+export async function runOrExit(command, args, env) {
+  const status = await run(command, args, env);
   if (status !== 0) process.exit(status);
 }
 
