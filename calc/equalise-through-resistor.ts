@@ -4,7 +4,8 @@ import { Laws } from './step/laws';
 import { coulombsToEmf } from './step/reach';
 import { Run } from './step/run';
 import { runLoop } from './step/run-loop';
-import { SeriesLoop, type LoopPart, type Sense } from './step/series-loop';
+import type { LoopPart, Sense } from './step/branches';
+import { SeriesLoop } from './step/series-loop';
 import { validateEfficiency, validateGroups } from './step/validate-step';
 import type { EqualiseInput, EqualiseResult, EqualiseSide } from './types';
 

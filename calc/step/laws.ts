@@ -89,8 +89,8 @@ export class Laws {
     if (kind === LOAD) return emf / Math.max(limits.totalOhm + limits.loadOhm!, LEAST_OHM);
     const watts = limits.maxWatts!;
     const square = emf * emf + 4 * loop.sense * limits.totalOhm * watts;
-    // A discharge whose loop cannot give that much power at any current is not limited by it.
-    if (square <= 0) return Infinity;
+    // A discharge whose loop cannot give that much power: the most it can give flows at half the voltage.
+    if (square <= 0) return emf / (2 * limits.totalOhm);
     const divisor = emf + Math.sqrt(square);
     return divisor > 0 ? (2 * watts) / divisor : Infinity;
   }
@@ -146,6 +146,7 @@ export class Laws {
     const { loop, limits } = this;
     if (kind === SET) return -loop.sense / Math.max(limits.totalOhm, LEAST_OHM);
     if (kind === LOAD) return 1 / Math.max(limits.totalOhm + limits.loadOhm!, LEAST_OHM);
-    return -amps / Math.sqrt(emf * emf + 4 * loop.sense * limits.totalOhm * limits.maxWatts!);
+    const square = emf * emf + 4 * loop.sense * limits.totalOhm * limits.maxWatts!;
+    return square <= 0 ? 1 / (2 * limits.totalOhm) : -amps / Math.sqrt(square);
   }
 }

@@ -1,28 +1,6 @@
-import { compileCurve, PIECE, type CompiledCurve } from '../curve/compiled-curve';
+import { PIECE, type CompiledCurve } from '../curve/compiled-curve';
 import { socAtVolts } from '../curve/ocv';
-import type { CellGroup, OcvTable } from '../types';
-
-/** +1: the current lifts the rest voltages (charging); −1: it lowers them. */
-export type Sense = 1 | -1;
-
-/** Groups on one side of the loop and what the current does to them. */
-export interface LoopPart {
-  groups: CellGroup[];
-  curve: OcvTable;
-  /** +1: the current charges these groups; −1: it discharges them. */
-  sense: Sense;
-  /** +1: their voltage adds to the loop's; −1: it stands against it. */
-  side: Sense;
-  /** Share of the charge that stays; 1 while discharging. */
-  efficiency: number;
-}
-
-interface Branch {
-  group: CellGroup;
-  part: LoopPart;
-  curve: CompiledCurve;
-  count: number;
-}
+import { mergeAlike, type Branch, type LoopPart, type Sense } from './branches';
 
 /**
  * Groups in series through one current, made ready for integration.
@@ -33,7 +11,7 @@ interface Branch {
  */
 export class SeriesLoop {
   readonly sense: Sense;
-  readonly branchOfGroup: number[] = [];
+  readonly branchOfGroup: number[];
   readonly counts: number[] = [];
   readonly ohmic: number[] = [];
   readonly startSoc: number[] = [];
@@ -64,7 +42,8 @@ export class SeriesLoop {
 
   constructor(parts: LoopPart[]) {
     this.sense = parts[0]!.sense;
-    const branches = this.merge(parts);
+    const { branches, branchOfGroup } = mergeAlike(parts);
+    this.branchOfGroup = branchOfGroup;
     for (const branch of branches) this.addBranch(branch);
     branches.forEach((branch, b) => {
       const ohm = this.classOhm[this.classOf[b]!]!;
@@ -170,20 +149,6 @@ export class SeriesLoop {
     return k;
   }
 
-  private merge(parts: LoopPart[]): Branch[] {
-    const branches: Branch[] = [];
-    for (const part of parts) {
-      const curve = compileCurve(part.curve);
-      for (const group of part.groups) {
-        let b = branches.findIndex((other) => other.part === part && sameGroup(other.group, group));
-        if (b < 0) b = branches.push({ group, part, curve, count: 0 }) - 1;
-        branches[b]!.count++;
-        this.branchOfGroup.push(b);
-      }
-    }
-    return branches;
-  }
-
   private addBranch({ group, part, curve, count }: Branch): void {
     const perCoulomb = (part.sense * part.efficiency) / (3600 * group.capacityAh);
     this.counts.push(count);
@@ -210,16 +175,4 @@ export class SeriesLoop {
   private startOver({ group, part }: Branch): number {
     return part.sense * (group.polarisationVolts ?? 0);
   }
-}
-
-function sameGroup(a: CellGroup, b: CellGroup): boolean {
-  return (
-    a === b ||
-    (a.restVolts === b.restVolts &&
-      a.capacityAh === b.capacityAh &&
-      a.ohmicResistanceOhm === b.ohmicResistanceOhm &&
-      a.polarisationResistanceOhm === b.polarisationResistanceOhm &&
-      a.polarisationTimeConstantS === b.polarisationTimeConstantS &&
-      (a.polarisationVolts ?? 0) === (b.polarisationVolts ?? 0))
-  );
 }

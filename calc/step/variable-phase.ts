@@ -1,15 +1,14 @@
 import { findRoot } from './find-root';
-import { Laws } from './laws';
+import { hermite } from './hermite';
 import { RosenbrockStep } from './rosenbrock';
 import type { Ending, Run } from './run';
+import { watchesOf, type Watch } from './watches';
 
 /** Local error allowed: of the current and of the charge a step brings, as shares; of the over-voltages, V. */
 const AMPS_TOLERANCE = 3e-4;
 const CHARGE_TOLERANCE = 1e-4;
 const OVER_TOLERANCE = 1e-5;
 const ROUNDING = 1e-13;
-/** Two laws agree within this share of the current. */
-const SWITCH_TOLERANCE = 1e-9;
 const MOST_STEPS = 100_000;
 
 /**
@@ -23,7 +22,6 @@ export function variablePhase(run: Run, law: number): Ending {
 }
 
 class VariablePhase {
-  private readonly loop;
   private readonly laws;
   private readonly drive: number[];
   private readonly decay: number[];
@@ -32,15 +30,16 @@ class VariablePhase {
   private readonly rate: number[];
   private readonly nextRate: number[];
   private readonly middle: number[];
+  private readonly watches: Watch[];
   private readonly deadAmps: number;
   private amps = 0;
+  private lastAmps = Infinity;
 
   constructor(
     private readonly phase: Run,
     private readonly law: number,
   ) {
     const { loop, laws, y } = phase;
-    this.loop = loop;
     this.laws = laws;
     const size = y.length;
     this.drive = [1, ...loop.classOhm.map((ohm, c) => ohm / loop.classTau[c]!)];
@@ -56,6 +55,7 @@ class VariablePhase {
     this.rate = zeros();
     this.nextRate = zeros();
     this.middle = zeros();
+    this.watches = watchesOf(phase, law);
     // A millionth of the one-hour current: what is then still to come cannot be seen on any meter.
     this.deadAmps = 1e-6 / (3600 * Math.max(...loop.socPerCoulomb.map(Math.abs)));
   }
@@ -87,7 +87,7 @@ class VariablePhase {
     throw new Error('The step did not come to an end; report this input.');
   }
 
-  /** A tenth of the quickest time the current itself would need to change. */
+  /** A third of the quickest time in which the current itself would change. */
   private firstStep(): number {
     const { gradient, drive, decay, phase } = this;
     let speed = 0;
@@ -135,8 +135,6 @@ class VariablePhase {
     return null;
   }
 
-  private lastAmps = Infinity;
-
   private commit(next: number[], amps: number, middle: number[], middleAmps: number, h: number): void {
     const { phase } = this;
     // Simpson's rule for the over-voltages' and resistances' share of the energy.
@@ -158,20 +156,13 @@ class VariablePhase {
     return amps * (over + amps * this.phase.moduleOhm);
   }
 
-  /** Cubic through both ends of the step and their rates. */
   private interpolate(next: number[], theta: number, h: number, out: number[]): void {
-    const { y } = this.phase;
-    const rest = 1 - theta;
-    const a = rest * rest * (1 + 2 * theta);
-    const b = theta * theta * (3 - 2 * theta);
-    const c = h * theta * rest * rest;
-    const d = -h * theta * theta * rest;
-    for (let j = 0; j < y.length; j++) out[j] = a * y[j]! + b * next[j]! + c * this.rate[j]! + d * this.nextRate[j]!;
+    hermite(this.phase.y, next, this.rate, this.nextRate, h, theta, out);
   }
 
   private firstEvent(y: number[], amps: number, from: number, to: number, h: number, next: number[]): Event | null {
     let first: Event | null = null;
-    for (const watch of this.watches()) {
+    for (const watch of this.watches) {
       if (watch.value(y, amps) < 0) continue;
       const scratch = new Array<number>(y.length).fill(0);
       const at = (theta: number) => {
@@ -185,38 +176,10 @@ class VariablePhase {
     return first;
   }
 
-  private watchList: Watch[] | null = null;
-
-  /** What ends or changes the stretch, each as a value that is negative until then. */
-  private watches(): Watch[] {
-    if (this.watchList) return this.watchList;
-    const { phase, laws, law } = this;
-    const { stops } = phase;
-    const list: Watch[] = [];
-    if (Number.isFinite(stops.atCoulombs))
-      list.push({ value: (y) => y[0]! - stops.atCoulombs, ending: () => ({ kind: 'target' }) });
-    if (stops.cutoffAmps > 0 && Laws.isVoltageLimit(law))
-      list.push({ value: (_, amps) => stops.cutoffAmps - amps, ending: () => ({ kind: 'cutoff' }) });
-    const level = phase.groupLevel;
-    if (level !== null)
-      for (let b = 0; b < this.loop.branchCount; b++)
-        list.push({
-          value: (y, amps) => laws.branchTerminal(b, y, amps) - level,
-          ending: () => ({ kind: 'group-limit', branch: b }),
-        });
-    if (laws.kinds.length > 1)
-      list.push({
-        value: (y, amps) => amps - laws.leastOther(law, y) - SWITCH_TOLERANCE * Math.abs(amps),
-        ending: () => ({ kind: 'switch', law: null }),
-      });
-    if (!phase.signed) list.push({ value: (_, amps) => -amps - 1e-12, ending: () => ({ kind: 'switch', law: null }) });
-    return (this.watchList = list);
-  }
-
   /** Takes the step only as far as the event, and corrects for the interpolant's error once. */
   private cut(event: Event, h: number): Ending | null {
     const { phase, laws, law, method } = this;
-    const ending = event.watch.ending();
+    const ending = event.watch.ending;
     let cutS = event.theta * h;
     if (cutS <= 1e-9 + 1e-14 * phase.s && ending.kind === 'switch') {
       // Two laws that touch without crossing would hand over for ever: after a few times take the step as it is.
@@ -238,11 +201,6 @@ class VariablePhase {
     this.commit(next, amps, this.middle, laws.amps(law, this.middle), cutS);
     return ending;
   }
-}
-
-interface Watch {
-  value: (y: number[], amps: number) => number;
-  ending: () => Ending;
 }
 
 interface Event {
