@@ -5,6 +5,7 @@ import type {
   NeighbourState,
   ResistorParameters,
   SpareState,
+  Spreads,
   TargetState,
   WorkshopParameters,
 } from '@/calc/plan-types';
@@ -21,6 +22,8 @@ export interface FrozenInputs {
   workshop: WorkshopParameters;
   celsius: number;
   seed: number;
+  /** Standard deviations that stand in place of the defaults. */
+  spreads?: Partial<Spreads>;
   lagLimitVolts: number;
   /** When the spare's reading was taken, epoch ms. */
   spareReadAt: number;

@@ -1,4 +1,7 @@
 /** Every routes file of the server; add yours here. */
+import { alertsRoutes } from './alerts.routes';
+import { boardRoutes } from './board.routes';
+import { chargesRoutes } from './charges.routes';
 import type { RoutesModule } from './define-route';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
@@ -19,5 +22,8 @@ export const routesModules: RoutesModule[] = [
   equipmentRoutes,
   stockRoutes,
   plansRoutes,
+  chargesRoutes,
+  boardRoutes,
+  alertsRoutes,
   waitsRoutes,
 ];

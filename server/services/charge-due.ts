@@ -16,7 +16,7 @@ export const STOPPED_ON_BOARD_MS = 10 * 60_000;
 export const REFRESH_MS = 5 * 60_000;
 
 /** An end that has come by the numbers while the stage has not: looked at again after this, ms. */
-const SOON_MS = 10_000;
+const SOON_MS = 60_000;
 
 /** Latest instant at which the charge still keeps its word: the planned 90 %, or the wished time where that is earlier. */
 export const promisedAt = ({ charge }: Pick<ChargeFile, 'charge'>): number =>

@@ -25,6 +25,7 @@ export function reckonInput(file: ChargeFile, at: number): ReckonInput {
     option: charge.option,
     celsius: frozen.celsius,
     seed: frozen.seed,
+    ...(frozen.spreads === undefined ? {} : { spreads: frozen.spreads }),
     runs: file.runs.map((run, index) => ({
       fromS: secondsOf(charge, run.fromAt),
       toS: run.toAt === null ? null : secondsOf(charge, run.toAt),

@@ -128,13 +128,14 @@ export async function settle(
   await updateCharge(manager, charge.workshopId, charge.id, patch as Partial<Charge>);
   await insertEvents(
     manager,
-    [...notes, ...happened].map((note) => eventOf(charge, note, now)),
+    [...notes, ...happened].map((note, place) => eventOf(charge, note, now + place)),
   );
   const boardRev = await raiseBoardRev(manager, charge.workshopId);
   return { workshopId: charge.workshopId, boardRev, charge, alerts, people: file.people };
 }
 
-const eventOf = (charge: Charge, note: Note, now: number): ChargeEvent => ({
+/** Lines written together keep their order by their instants of writing. */
+const eventOf = (charge: Charge, note: Note, createdAt: number): ChargeEvent => ({
   id: newId(),
   workshopId: charge.workshopId,
   chargeId: charge.id,
@@ -142,7 +143,7 @@ const eventOf = (charge: Charge, note: Note, now: number): ChargeEvent => ({
   kind: note.kind,
   personId: note.personId,
   text: note.text,
-  createdAt: now,
+  createdAt,
 });
 
 async function syncLookIns(manager: EntityManager, file: ChargeFile, now: number): Promise<void> {

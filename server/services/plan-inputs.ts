@@ -81,7 +81,13 @@ export async function buildPlanInputs(
   const targetVolts = correctedVolt(request.targetVolts, packMeter);
   const toleranceMillivolts = request.toleranceMillivolts ?? workshop.toleranceMillivolts;
   const bench = await channelsFor(manager, workshopId, spare.id, meters, now);
+  const meterVolts = meterOffsetSdVolts(
+    [packMeter, spareMeter].filter((meter) => meter !== null),
+    now,
+  );
+  const spreads = meterVolts === undefined ? {} : { spreads: { meterVolts } };
   const frozen: FrozenInputs = {
+    ...spreads,
     module: moduleParameters(type),
     spare: spareNow,
     target: {
@@ -106,10 +112,6 @@ export async function buildPlanInputs(
     lagLimitVolts: workshop.lagLimitMillivolts / 1000,
     spareReadAt: reading.at,
   };
-  const meterVolts = meterOffsetSdVolts(
-    [packMeter, spareMeter].filter((meter) => meter !== null),
-    now,
-  );
   return {
     input: {
       module: frozen.module,
@@ -123,7 +125,7 @@ export async function buildPlanInputs(
       seed: frozen.seed,
       readyByS: readyBy === null ? null : (readyBy - now) / 1000,
       clipOnAtS: (clipOnAt - now) / 1000,
-      ...(meterVolts === undefined ? {} : { spreads: { meterVolts } }),
+      ...spreads,
     },
     frozen,
     channelNames: bench.names,

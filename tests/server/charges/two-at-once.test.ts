@@ -1,0 +1,128 @@
+import { afterEach, beforeEach, expect, test } from 'vitest';
+import type { ChargeDto } from '@/shared/contract/charge';
+import { ChannelHold } from '@/server/entities/channel-hold';
+import { RunStretch } from '@/server/entities/run-stretch';
+import { act, answered, at, boardOf, did, kept, key, makeBench, minute, running, seen, type Bench } from './bench';
+
+let bench: Bench;
+beforeEach(async () => {
+  bench = await makeBench();
+});
+afterEach(() => bench.server.close());
+
+test('of 50 that start the same charge at once exactly one does; the others are told with the present charge', async () => {
+  const charge = await answered(bench, await kept(bench, { spareId: await bench.spare('S-0001') }));
+  const answers = await Promise.all(Array.from({ length: 50 }, () => act(bench, charge, 'start')));
+  expect(answers.filter((answer) => answer.status === 200)).toHaveLength(1);
+  const lost = answers.filter((answer) => answer.status === 412);
+  expect(lost).toHaveLength(49);
+  for (const answer of lost)
+    expect(answer.body).toMatchObject({ code: 'stale', present: { id: charge.id, stage: 'charging' } });
+  const runs = await bench.server.deps.dataSource.manager.countBy(RunStretch, { chargeId: charge.id });
+  expect(runs).toBe(1);
+});
+
+test('of 50 charges that start on one channel at once exactly one does; the others are told who has it', async () => {
+  const charges: ChargeDto[] = [];
+  for (let count = 1; count <= 50; count += 1)
+    charges.push(await answered(bench, await kept(bench, { spareId: await bench.spare(`S-${1000 + count}`) })));
+  const answers = await Promise.all(charges.map((charge) => act(bench, charge, 'start')));
+  const won = answers.filter((answer) => answer.status === 200);
+  expect(won).toHaveLength(1);
+  const winner = won[0]!.body as ChargeDto;
+  for (const answer of answers.filter((one) => one.status !== 200)) {
+    expect(answer.status).toBe(409);
+    expect(answer.body).toMatchObject({ code: 'channel_taken', present: { chargeId: winner.id, channelName: 'A1' } });
+  }
+  const runningHolds = await bench.server.deps.dataSource.manager.countBy(ChannelHold, { state: 'running' });
+  expect(runningHolds).toBe(1);
+  const stages = (await boardOf(bench)).charges.map((card) => card.stage);
+  expect(stages.filter((stage) => stage === 'charging')).toHaveLength(1);
+  expect(stages.filter((stage) => stage === 'planned')).toHaveLength(49);
+}, 120_000);
+
+test('a start that a lost connection repeats under its key is done once and answered the same', async () => {
+  const charge = await answered(bench, await kept(bench, { spareId: await bench.spare('S-0001') }));
+  const send = () =>
+    bench
+      .as('technician')
+      .post(`/api/charges/${charge.id}/start`)
+      .set('If-Match', `"${charge.rev}"`)
+      .set('Idempotency-Key', 'the-same-start');
+  const first = await send();
+  bench.server.clock.advance(5_000);
+  const again = await send();
+  expect([first.status, again.status]).toEqual([200, 200]);
+  expect((again.body as ChargeDto).startedAt).toBe((first.body as ChargeDto).startedAt);
+});
+
+test('hold and stop at once: one wins, the other sees what it became', async () => {
+  const charge = await running(bench, { spareId: await bench.spare('S-0001') });
+  const [hold, stop] = await Promise.all([
+    act(bench, charge, 'hold', { reason: 'look' }),
+    act(bench, charge, 'stop', { reason: 'smell' }, 'foreman'),
+  ]);
+  const statuses = [hold.status, stop.status].sort();
+  expect(statuses).toEqual([200, 412]);
+  const loser = hold.status === 412 ? hold : stop;
+  const winner = hold.status === 412 ? stop : hold;
+  expect((loser.body as { present: ChargeDto }).present.stage).toBe((winner.body as ChargeDto).stage);
+});
+
+test('40 writes of all kinds at once on 8 charges end with every row in place and the board counted up by each', async () => {
+  const channels = Array.from({ length: 8 }, (_, index) => ({ name: `D${index + 1}` }));
+  const wide = await makeBench({ channels });
+  try {
+    const charges: ChargeDto[] = [];
+    for (let index = 0; index < 8; index += 1)
+      charges.push(await running(wide, { spareId: await wide.spare(`S-${index}`) }, { channel: `D${index + 1}` }));
+    const before = (await boardOf(wide)).rev;
+    wide.server.clock.advance(20 * minute);
+    const writes = charges.flatMap((charge) => [
+      wide.as('technician').post(`/api/charges/${charge.id}/readings`, { amps: '10' }).set('Idempotency-Key', key()),
+      wide.as('foreman').post(`/api/charges/${charge.id}/readings`, { celsius: '23' }).set('Idempotency-Key', key()),
+      wide.as('technician').post(`/api/charges/${charge.id}/look-ins`, {}),
+      wide.as('foreman').post(`/api/charges/${charge.id}/look-ins`, { note: 'cool' }),
+      wide.as('technician').post(`/api/charges/${charge.id}/readings`, { amps: 'x' }).set('Idempotency-Key', key()),
+    ]);
+    const answers = await Promise.all(writes);
+    expect(answers.filter((answer) => answer.status === 200)).toHaveLength(32);
+    expect(answers.filter((answer) => answer.status === 400)).toHaveLength(8);
+    for (const charge of charges) {
+      const now = await seen(wide, charge.id);
+      expect(now.readings).toHaveLength(2);
+      expect(now.events.filter((event) => event.kind === 'look-in')).toHaveLength(2);
+    }
+    expect((await boardOf(wide)).rev).toBe(before + 32);
+  } finally {
+    await wide.server.close();
+  }
+});
+
+test('who clips on where another charge rests has taken its clips off: its end of current is settled', async () => {
+  const first = await running(bench, { spareId: await bench.spare('S-0001'), repairRef: 'R-1' });
+  await bench.live(at(first.currentEndAt) - bench.server.clock.now() + 10 * minute);
+  expect((await seen(bench, first.id)).stage).toBe('resting');
+  await running(bench, { spareId: await bench.spare('S-0002'), repairRef: 'R-2' });
+  await bench.sleeper.runDue();
+  const resting = await seen(bench, first.id);
+  expect(resting.nextHand).toBeNull();
+  expect(resting.events.map((event) => event.text)).toContain('R-2 was clipped on to A1, so its current is off.');
+  // A late reading cannot take the channel back.
+  const late = new Date(at(first.startedAt) + 5 * minute).toISOString();
+  const answer = await bench
+    .as('technician')
+    .post(`/api/charges/${first.id}/readings`, { amps: '2', at: late })
+    .set('Idempotency-Key', key());
+  expect(answer.status).toBe(200);
+  expect((answer.body as ChargeDto).stage).toBe('resting');
+});
+
+test('a planned charge cannot start while another runs on its channel, and can as soon as that one is stopped', async () => {
+  const first = await running(bench, { spareId: await bench.spare('S-0001'), repairRef: 'R-1' });
+  const second = await answered(bench, await kept(bench, { spareId: await bench.spare('S-0002') }));
+  expect(second.startBlockedBy).toBe('A1 is taken by R-1. Wait until it is free, or plan on another channel.');
+  expect((await act(bench, second, 'start')).status).toBe(409);
+  await did(bench, first, 'stop', { reason: 'The channel is needed' });
+  expect((await did(bench, await seen(bench, second.id), 'start')).stage).toBe('charging');
+});
