@@ -23,6 +23,12 @@ const letters = (text: string): string => [...text].filter((character) => /\p{L}
 const spelled = (text: string): string =>
   letters([...text].map((character) => digitsForLetters[character] ?? character).join(''));
 
+/** How a password may be meant: its letters alone, and with digits and signs read as letters, those at its ends perhaps not. */
+const formsOf = (typed: string): string[] => {
+  const open = typed.replace(/[^\p{L}]+$/u, '');
+  return [letters(typed), spelled(typed), spelled(open), spelled(open.replace(/^[^\p{L}]+/u, ''))];
+};
+
 /** 'abcabcabcabc', '1212…', '111…': one short piece over and over. */
 function isRepeated(text: string): boolean {
   for (let length = 1; length <= 4; length += 1)
@@ -66,11 +72,11 @@ export function weaknessOf(password: string, own: OwnWords): string | null {
   for (const { text, called } of [{ text: 'bidewell', called: 'this product’s name' }, ...own]) {
     const word = letters(plain(text));
     if (word.length < 4) continue;
-    for (const form of [letters(typed), spelled(typed)])
+    for (const form of formsOf(typed))
       if (form.includes(word) && [...typed].length - word.length < enoughBeside)
         return `It is little more than ${called}. Use several words that have nothing to do with you.`;
   }
-  for (const form of [letters(typed), spelled(typed)]) {
+  for (const form of formsOf(typed)) {
     const beside = [...typed].length - form.length;
     if (form !== '' && isCommon(form) && beside < enoughBeside)
       return 'It is among the passwords that are tried first. Use several words of your own.';
@@ -87,8 +93,8 @@ export function refuseWeakPassword(password: string, own: OwnWords): void {
 /** What a person's password must not be built on. */
 export const ownWords = (who: { workshopName: string; name: string; email: string }): OwnWords => [
   { text: who.workshopName, called: 'the workshop’s name' },
-  { text: who.email.split('@')[0] ?? '', called: 'your address' },
-  { text: (who.email.split('@')[1] ?? '').split('.')[0] ?? '', called: 'your address' },
   { text: who.name, called: 'your name' },
   ...who.name.split(/\s+/).map((text) => ({ text, called: 'your name' })),
+  { text: who.email.split('@')[0] ?? '', called: 'your address' },
+  { text: (who.email.split('@')[1] ?? '').split('.')[0] ?? '', called: 'your address' },
 ];
