@@ -7,9 +7,11 @@ export interface Drive {
   maxAmps: number | null;
   /** What the set voltage is more than dialled in, V between the clips. */
   setShiftVolts: number;
+  /** A reading has shown a current in the taper. */
+  seenInTaper: boolean;
 }
 
-export const AS_SET: Drive = { maxAmps: null, setShiftVolts: 0 };
+export const AS_SET: Drive = { maxAmps: null, setShiftVolts: 0, seenInTaper: false };
 
 /** The model run on from a state. */
 export interface Forward {

@@ -1,9 +1,8 @@
-import type { PlanOption } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
 import type { Sample } from '../plan/samples';
 import { AS_SET, type Drive } from './lane';
 import { liveSampleRun, type MovedIn } from './live-samples';
-import type { LivePast, LiveRound } from './live-rounds';
+import { livePast, type LivePast, type LiveRound, type ReplayInput } from './live-rounds';
 import type { ModuleState } from './module-state';
 
 /** One lane's current still to come, seconds. */
@@ -31,13 +30,14 @@ export interface Ahead {
 }
 
 /** What is still to come of a charge: the rest of the running round by the core from its present state, then the planned ones. */
-export function liveAhead(model: PlanModel, option: PlanOption, past: LivePast): Ahead {
+export function liveAhead(model: PlanModel, input: ReplayInput, past: LivePast): Ahead {
+  const { option } = input;
   const current = past.begun[past.begun.length - 1];
   const ahead: Ahead = { rounds: [], endState: past.state, ampHours: 0 };
-  let moved: MovedIn = (_, group) => past.movedAh[group]!;
+  let moved = movedAlike(model, past.movedAh);
   const begun = past.begun.length;
   if (current && current.endedAtS === null) {
-    const left = restOfRound(model, option, past, current, moved);
+    const left = restOfRound(model, input, past, current);
     ahead.rounds.push({ handsS: 0, lanes: left.lanes });
     ahead.endState = left.state;
     ahead.ampHours += left.ampHours;
@@ -66,17 +66,27 @@ export function liveAhead(model: PlanModel, option: PlanOption, past: LivePast):
   return ahead;
 }
 
-function restOfRound(
-  model: PlanModel,
-  option: PlanOption,
-  past: LivePast,
-  round: LiveRound,
-  moved: MovedIn,
-): { lanes: LaneAhead[]; state: ModuleState; ampHours: number; moved: MovedIn } {
+/**
+ * Samples advanced from the present state: what has been passed is passed in every sample, and a doubt of the capacity counts for
+ * what is still to come only.
+ */
+const movedAlike =
+  (model: PlanModel, movedAh: readonly number[]): MovedIn =>
+  (sample, group) =>
+    movedAh[group]! * (sample.capacityAh[group]! / model.nominal.capacityAh[group]!);
+
+interface RestOfRound {
+  lanes: LaneAhead[];
+  state: ModuleState;
+  ampHours: number;
+  moved: MovedIn;
+}
+
+function restOfRound(model: PlanModel, input: ReplayInput, past: LivePast, round: LiveRound): RestOfRound {
   const soc = [...past.state.soc];
   const over = [...past.state.over];
   let ampHours = 0;
-  let after = moved;
+  let after = movedAlike(model, past.movedAh);
   const lanes = round.lanes.map((lane, at): LaneAhead => {
     const one = round.pasts[at]!;
     if (one.endedAtS !== null || one.overrun)
@@ -88,21 +98,52 @@ function restOfRound(
       over[group] = left.state.over[group]!;
     }
     if (lane.step.kind !== 'pre-level') ampHours += left.ampHours;
-    const run = liveSampleRun(model, option, lane.step, moved, drive);
+    const since = sampledSince(model, input, past, round, at);
+    const run = liveSampleRun(model, input.option, lane.step, since.moved, drive, one.amps);
     const nominal = run(model.nominal).seconds;
-    // A resistor's run is that of its whole step; of a charger's it is what is left.
-    const whole = lane.step.channelIds.length === 0 ? lane.step.stopS - lane.step.startS : nominal;
+    // A resistor's run is that of its whole step, whatever has passed of it.
+    const resistor = lane.step.channelIds.length === 0;
+    const whole = resistor ? lane.step.stopS - lane.step.startS : nominal;
     const before = after;
     // Levelling passes charge from group to group: nothing comes in.
     const counts = lane.step.kind !== 'pre-level';
     after = (sample, group) =>
-      before(sample, group) + (counts && lane.step.groupIndexes.includes(group) ? lane.sign * run(sample).ampHours : 0);
+      since.elapsedS === 0
+        ? before(sample, group) +
+          (counts && lane.step.groupIndexes.includes(group) ? lane.sign * run(sample).ampHours : 0)
+        : before(sample, group);
     return {
       stepIndex: lane.index,
       seconds: left.seconds,
       taperAfterS: left.taperAfterS,
-      secondsIn: (sample) => (whole > 0 ? (run(sample).seconds * left.seconds) / whole : left.seconds),
+      secondsIn: (sample) =>
+        whole > 0
+          ? Math.max(0, (run(sample).seconds * (left.seconds + since.elapsedS)) / whole - since.elapsedS)
+          : left.seconds,
     };
   });
   return { lanes, state: { s: past.state.s, soc, over }, ampHours, moved: after };
+}
+
+/**
+ * From where a lane's samples run: from the present state; in a taper that nobody has read yet from where it began, as each
+ * sample's current has gone its own way since.
+ */
+function sampledSince(
+  model: PlanModel,
+  input: ReplayInput,
+  past: LivePast,
+  round: LiveRound,
+  at: number,
+): { moved: MovedIn; elapsedS: number } {
+  const one = round.pasts[at]!;
+  const here = { moved: movedAlike(model, past.movedAh), elapsedS: 0 };
+  const taperAtS = one.taperAtS;
+  if (taperAtS === null || one.drive.seenInTaper || round.lanes[at]!.step.channelIds.length === 0) return here;
+  const elapsedS = round.stretches.reduce(
+    (sum, { fromS, toS }) => sum + Math.max(0, toS - Math.max(fromS, taperAtS)),
+    0,
+  );
+  if (elapsedS <= 0) return here;
+  return { moved: movedAlike(model, livePast(model, input, taperAtS).movedAh), elapsedS };
 }

@@ -181,7 +181,7 @@ function driveFrom(lane: Lane, past: LanePast, reading: AmpsReading): Drive {
     past.taperAtS ??= reading.s;
     return lane.driveInTaper(past.state, reading.amps);
   }
-  return { maxAmps: reading.amps, setShiftVolts: 0 };
+  return { maxAmps: reading.amps, setShiftVolts: 0, seenInTaper: false };
 }
 
 function zeroBelow({ step }: Lane): number {

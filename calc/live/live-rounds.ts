@@ -19,6 +19,9 @@ export interface LiveRound {
   endedAtS: number | null;
 }
 
+/** What a replay needs. */
+export type ReplayInput = Pick<ReckonInput, 'option' | 'runs' | 'readings' | 'currentOffAtS'>;
+
 export interface LivePast {
   rounds: number[][];
   /** Begun ones, in order. */
@@ -32,11 +35,7 @@ export interface LivePast {
 }
 
 /** Replays a charge from its clip-on to `nowS`: stretches, readings, and the model between. */
-export function livePast(
-  model: PlanModel,
-  input: Pick<ReckonInput, 'option' | 'runs' | 'readings' | 'currentOffAtS'>,
-  nowS: number,
-): LivePast {
+export function livePast(model: PlanModel, input: ReplayInput, nowS: number): LivePast {
   const { option } = input;
   const rounds = liveRounds(option.steps);
   const off = input.currentOffAtS ?? Infinity;

@@ -16,7 +16,8 @@ export type MovedIn = (sample: Sample, group: number) => number;
 /**
  * One planned step in the samples, from where earlier charge has left the groups: the same quadrature as the plan's.
  *
- * @param drive what readings have shown of the source
+ * @param drive what readings have shown of the source; in a taper it makes every sample begin with the amps that flow
+ * @param ampsNow those amps
  */
 export function liveSampleRun(
   model: PlanModel,
@@ -24,6 +25,7 @@ export function liveSampleRun(
   step: PlannedStep,
   movedIn: MovedIn,
   drive: Drive,
+  ampsNow = 0,
 ): SampleRun {
   const channel = model.input.channels.find((one) => one.channelId === step.channelIds[0]);
   if (!channel) return resistorRun(model, option, step);
@@ -54,8 +56,8 @@ export function liveSampleRun(
     sign,
     count,
     linkOhm,
-    // A set voltage that a reading has shown is no longer in doubt.
-    chargerSd: drive.setShiftVolts === 0 ? chargerSd(model, channel, count) : 0,
+    chargerSd: chargerSd(model, channel, count),
+    startAmps: drive.seenInTaper && ampsNow > 0 ? ampsNow : null,
     aimVolts: endVolts,
     first:
       step.way === 'terminals' &&

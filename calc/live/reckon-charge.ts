@@ -33,7 +33,7 @@ export function reckonCharge(input: ReckonInput): Reckoning {
   const { nowS, option } = input;
   const past = livePast(model, input, nowS);
   const over = input.currentOffAtS !== null && input.currentOffAtS <= nowS;
-  const ahead: Ahead = over ? { rounds: [], endState: past.state, ampHours: 0 } : liveAhead(model, option, past);
+  const ahead: Ahead = over ? { rounds: [], endState: past.state, ampHours: 0 } : liveAhead(model, input, past);
   const current = past.begun[past.begun.length - 1]!;
   const flowsOn = !over && ahead.rounds.length === 1 && isOverrun(current);
 

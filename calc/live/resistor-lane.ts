@@ -81,7 +81,11 @@ export function resistorLane(model: PlanModel, step: PlannedStep, index: number,
       ),
     atSetVolts: () => false,
     // The reading over the plan's amps at that charge, as amps at the start.
-    driveInTaper: (state, amps) => ({ maxAmps: (firstAmps * amps) / ampsAtPart(partOf(state)), setShiftVolts: 0 }),
+    driveInTaper: (state, amps) => ({
+      maxAmps: (firstAmps * amps) / ampsAtPart(partOf(state)),
+      setShiftVolts: 0,
+      seenInTaper: true,
+    }),
   };
 }
 

@@ -65,7 +65,7 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     });
     // The plan was reachable; a set voltage that a reading has shifted may not be, and then the amps alone are believed.
     if (result.outcome === 'unreachable' && drive.setShiftVolts !== 0)
-      return forward(state, { maxAmps: drive.maxAmps, setShiftVolts: 0 }, maxSeconds, onwards);
+      return forward(state, { ...drive, setShiftVolts: 0 }, maxSeconds, onwards);
     const taperAfterS =
       result.voltageLimitAtS !== null && result.outcome !== 'unreachable' ? result.voltageLimitAtS : null;
     return {
@@ -135,10 +135,14 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
         amps * source.leadResistanceOhm +
           Math.max(channel.displayStepVolts, 0.002 * (joined ? 1 : step.groupIndexes.length)),
     driveInTaper: (state, amps) => {
-      if (!tapers) return { maxAmps: amps, setShiftVolts: 0 };
+      if (!tapers) return { maxAmps: amps, setShiftVolts: 0, seenInTaper: false };
       const groups = groupsOf(state);
       const needed = electromotive(groups) + sign * amps * totalOhm(groups);
-      return { maxAmps: null, setShiftVolts: source.setVolts === null ? 0 : needed - source.setVolts };
+      return {
+        maxAmps: null,
+        setShiftVolts: source.setVolts === null ? 0 : needed - source.setVolts,
+        seenInTaper: true,
+      };
     },
   };
 }

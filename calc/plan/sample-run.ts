@@ -23,6 +23,8 @@ export interface SampleRunInput {
   first: boolean;
   /** Current at which a taper ends; null: ends at the target. */
   endAmps: number | null;
+  /** In a taper that has been seen: the current with which every sample begins, in place of the set voltage; else null. */
+  startAmps?: number | null;
   /** The string between the clips where the current begins, in one sample. */
   stringIn: (sample: Sample) => { string: StringCharge; ohm: number };
 }
@@ -41,16 +43,19 @@ export function sampleRun(input: SampleRunInput): SampleRun {
     const before = known.get(sample);
     if (before) return before;
     const { string, ohm } = input.stringIn(sample);
+    const resistanceOhm = ohm + source.leadResistanceOhm + input.linkOhm;
+    const asSet =
+      source.setVolts === null
+        ? null
+        : source.setVolts + count * sample.curveShiftVolts + input.chargerSd * sample.chargerDraw;
+    const startAmps = input.startAmps ?? null;
     const law: CurrentLaw = {
       openVolts: (ampHours) => stringVolts(string, ampHours),
       sign,
       maxAmps: (source.maxAmps ?? Infinity) * sample.currentFactor,
-      setVolts:
-        source.setVolts === null
-          ? null
-          : source.setVolts + count * sample.curveShiftVolts + input.chargerSd * sample.chargerDraw,
+      setVolts: startAmps === null ? asSet : stringVolts(string, 0) + sign * startAmps * resistanceOhm,
       maxWatts: source.maxWatts,
-      resistanceOhm: ohm + source.leadResistanceOhm + input.linkOhm,
+      resistanceOhm,
       loadOhm: source.loadOhm,
       leastAmps: endAmps ?? (source.maxAmps ?? 1) * LEAST_SHARE,
     };
