@@ -13,7 +13,7 @@ const FACTOR: Record<ResistanceKind, number> = { long: 1, 'pulse-10s': 2.1, 'pul
  * The resistance that decides charges of hours, R0 + R1, from the one a person has typed, ohm.
  *
  * @throws CalcInputError for an unknown kind or a resistance below 0
- * @example longResistance('pulse-10s', 0.002) === 0.0042
+ * @example longResistance('pulse-10s', 0.5) === 1.05
  */
 export function longResistance(kind: ResistanceKind, ohm: number): number {
   const factor = FACTOR[kind];
