@@ -66,7 +66,7 @@ export function ampHoursToVolts(string: StringCharge, volts: number): number {
     else low = at;
     let next = at - sum / slope;
     if (!(next > low && next < high)) next = (low + high) / 2;
-    if (Math.abs(next - at) < 1e-9 * whole) return next;
+    if (Math.abs(next - at) < 1e-12 * whole) return next;
     at = next;
   }
   return at;
