@@ -6,7 +6,7 @@ const tidy = (value: number) => Math.round(value * 1e6) / 1e6;
 /** The multiples of `step` between two ends, both included. */
 export function multiples(low: number, high: number, step: number): number[] {
   const found: number[] = [];
-  for (let i = Math.ceil(low / step - 1e-9); i * step <= high + step * 1e-9; i++) found.push(tidy(i * step));
+  for (let i = Math.ceil(low / step - 1e-9); i * step <= high + step * 1e-9; i++) found.push(tidy(i * step) || 0);
   return found;
 }
 

@@ -1,4 +1,4 @@
-import type { Ref } from 'react';
+import { useImperativeHandle, type Ref } from 'react';
 import { Pressable, type View, type StyleProp, type ViewStyle } from 'react-native';
 import { Icon } from '../icons/icon';
 import type { IconName } from '../icons/icon-paths';
@@ -6,6 +6,7 @@ import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { radius, stroke, touch, type ColorRole } from '../theme/tokens';
 import { web } from '../theme/web-props';
+import { useSoftDisabled } from './pressing';
 import { Txt, type TextTone } from './txt';
 
 /** 'primary' is ink; 'line' stands beside it; 'danger' opens a confirm step, never acts by itself. */
@@ -53,16 +54,16 @@ export function Button({
 }: ButtonProps) {
   const styles = useStyles();
   const still = disabled || busy;
+  const own = useSoftDisabled(still);
+  useImperativeHandle(ref, () => own.current as View, [own]);
   const iconSize = size === 'small' ? 20 : 24;
   return (
     <Pressable
-      ref={ref}
+      ref={own}
       role="button"
       aria-label={label}
       aria-busy={busy || undefined}
-      // Not `disabled`: it keeps its place in the tab order, so that the reason can be read where it stands.
       {...web({ 'aria-describedby': describedBy, dataSet: { press: '' } })}
-      aria-disabled={still || undefined}
       onPress={still ? undefined : onPress}
       style={({ pressed }) => [
         styles.box,

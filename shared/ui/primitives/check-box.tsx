@@ -4,6 +4,7 @@ import { StageGlyph } from '../stage/stage-glyph';
 import { touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import { TickMark } from './choice-row';
+import { pressOnSpace, useSoftDisabled } from './pressing';
 import { Txt } from './txt';
 
 /** A tick box with its sentence; the whole line is the target. Nothing is ever ticked before a person did it. */
@@ -25,15 +26,20 @@ export function CheckBox({
   /** Drawn in place of the title; `title` still names the box. */
   children?: ReactNode;
 }) {
+  const own = useSoftDisabled(disabled);
+  const press = disabled ? undefined : () => onChange(!checked);
   return (
     <View>
       <Pressable
+        ref={own}
         role="checkbox"
         aria-checked={checked}
         aria-label={children || meaning || error ? [title, meaning, error].filter(Boolean).join('. ') : undefined}
-        aria-disabled={disabled || undefined}
-        {...web({ 'aria-invalid': error !== undefined || undefined })}
-        onPress={disabled ? undefined : () => onChange(!checked)}
+        {...web({
+          'aria-invalid': error !== undefined || undefined,
+          onKeyDown: (event) => pressOnSpace(event, press),
+        })}
+        onPress={press}
         style={styles.row}
       >
         <TickMark on={checked} disabled={disabled} />

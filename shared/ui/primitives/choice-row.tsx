@@ -6,6 +6,7 @@ import { makeStyles } from '../theme/make-styles';
 import { OnSurface } from '../theme/surface';
 import { radius, stroke } from '../theme/tokens';
 import { web, type WebKeyEvent } from '../theme/web-props';
+import { pressOnSpace, useSoftDisabled } from './pressing';
 import { Txt } from './txt';
 import { focusSibling, steppedIndex } from './walk';
 
@@ -52,14 +53,23 @@ export function ChoiceRow({
   ...walking
 }: ChoiceRowProps & RowWalking) {
   const styles = useStyles();
+  const own = useSoftDisabled(disabled);
+  const press = disabled ? undefined : onPress;
   return (
     <Pressable
+      ref={own}
       role={mark === 'radio' ? 'radio' : 'checkbox'}
       aria-checked={chosen}
       aria-label={children ? title : undefined}
-      aria-disabled={disabled || undefined}
-      onPress={disabled ? undefined : onPress}
-      {...web({ tabIndex: walking.tabIndex, onKeyDown: walking.onKeyDown, dataSet: { press: '' } })}
+      onPress={press}
+      {...web({
+        tabIndex: walking.tabIndex,
+        onKeyDown: (event) => {
+          pressOnSpace(event, press);
+          walking.onKeyDown?.(event);
+        },
+        dataSet: { press: '' },
+      })}
       style={({ pressed }) => [
         styles.row,
         { marginHorizontal: -outset, paddingHorizontal: Math.max(outset, 12) },

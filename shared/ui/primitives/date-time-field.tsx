@@ -1,6 +1,5 @@
 import { StyleSheet, View } from 'react-native';
-import { dayName } from '../format/clock';
-import { addDays } from '../format/zone';
+import { dayOptions } from '../format/choices';
 import { Select } from './select';
 import { TimeField } from './time-field';
 
@@ -8,14 +7,6 @@ import { TimeField } from './time-field';
 export interface DayAndTime {
   day: string;
   time: string;
-}
-
-/** The days offered around today, in words. */
-export function dayOptions(today: string, from: number, to: number): { value: string; label: string }[] {
-  return Array.from({ length: to - from + 1 }, (_, i) => {
-    const day = addDays(today, from + i);
-    return { value: day, label: dayName(day, today) };
-  });
 }
 
 /** An instant in the workshop's zone: the day from a list, the time typed or picked. */

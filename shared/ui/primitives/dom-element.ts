@@ -1,6 +1,10 @@
+/// <reference path="../react-native-web.d.ts" />
 import type { ReactElement, ReactNode } from 'react';
 // The one place that asks the web renderer for an element React Native has no primitive for.
-import createElement from 'react-native-web/dist/exports/createElement';
+// @ts-expect-error -- the renderer ships no types
+import untyped from 'react-native-web/dist/exports/createElement';
+
+const createElement = untyped as (tag: string, props: object) => ReactElement;
 
 /** A DOM element with React Native styles and accessibility props. Web only; for controls the browser does best. */
 export const domElement = (

@@ -6,6 +6,7 @@ import { makeStyles } from '../theme/make-styles';
 import { radius, stroke, touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import { Badge } from './badge';
+import { useSoftDisabled } from './pressing';
 
 /** 48 px, an icon and a name for readers. `framed` where it stands alone among text. */
 export function IconButton({
@@ -28,11 +29,12 @@ export function IconButton({
   expanded?: boolean;
 }) {
   const styles = useStyles();
+  const own = useSoftDisabled(disabled);
   return (
     <Pressable
+      ref={own}
       role="button"
       aria-label={count ? `${label}, ${count}` : label}
-      aria-disabled={disabled || undefined}
       aria-expanded={expanded}
       {...web({ dataSet: { press: '' } })}
       onPress={disabled ? undefined : onPress}

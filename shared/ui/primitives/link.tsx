@@ -1,6 +1,7 @@
 import { Pressable, StyleSheet, type StyleProp, type TextStyle, type ViewStyle } from 'react-native';
 import { touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
+import { useSoftDisabled } from './pressing';
 import { Txt, type TextTone } from './txt';
 
 /**
@@ -33,6 +34,7 @@ export function Link({
   align?: 'left' | 'right';
   style?: StyleProp<ViewStyle>;
 }) {
+  const own = useSoftDisabled(disabled);
   const address = href
     ? {
         href,
@@ -45,9 +47,9 @@ export function Link({
     : null;
   return (
     <Pressable
+      ref={own}
       role={href ? 'link' : 'button'}
       aria-label={label}
-      aria-disabled={disabled || undefined}
       onPress={disabled || href ? undefined : onPress}
       {...web(address ?? {})}
       style={[styles.target, tight && styles.tight, align === 'right' && styles.right, style]}

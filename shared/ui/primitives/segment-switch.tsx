@@ -3,6 +3,7 @@ import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { radius, stroke, touch } from '../theme/tokens';
 import { web, type WebKeyEvent } from '../theme/web-props';
+import { pressOnSpace } from './pressing';
 import { Txt } from './txt';
 import { focusSibling, steppedIndex } from './walk';
 
@@ -51,7 +52,14 @@ export function SegmentSwitch<V extends string>({
             key={segment.value}
             role="radio"
             aria-checked={on}
-            {...web({ tabIndex: on ? 0 : -1, onKeyDown: (event) => walk(event, index), dataSet: { press: '' } })}
+            {...web({
+              tabIndex: on ? 0 : -1,
+              onKeyDown: (event) => {
+                pressOnSpace(event, () => onChange(segment.value));
+                walk(event, index);
+              },
+              dataSet: { press: '' },
+            })}
             onPress={() => onChange(segment.value)}
             style={({ pressed }) => [
               styles.segment,

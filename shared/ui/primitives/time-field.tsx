@@ -1,17 +1,11 @@
 import { View } from 'react-native';
 import { Icon } from '../icons/icon';
+import { nearestQuarter, quarterHours } from '../format/choices';
 import { parseTimeOfDay, timeOfDayText } from '../format/parse';
 import { makeStyles } from '../theme/make-styles';
 import { touch } from '../theme/tokens';
 import { domElement } from './dom-element';
 import { Field, type FieldProps } from './field';
-
-/** Every quarter hour of a day, as they are offered. */
-export const quarterHours: readonly string[] = Array.from({ length: 96 }, (_, i) => timeOfDayText(i * 15));
-
-/** The quarter hour nearest to what stands in the field; noon where nothing that is a time stands there. */
-export const nearestQuarter = (text: string): string =>
-  timeOfDayText((Math.round((parseTimeOfDay(text) ?? 720) / 15) * 15) % 1440);
 
 /**
  * A time of day: typed ('1815', '18:15') or picked in quarter hours from the browser's own list. The text stays as

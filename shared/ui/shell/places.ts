@@ -21,7 +21,10 @@ const tabs: Readonly<Record<string, Place['tab']>> = {
 export function placeOf(path: string): Place {
   const bare = path.replace(/\/+$/, '') || '/';
   const first = bare.split('/')[1] ?? '';
-  const rail = (['spares', 'alerts', 'waits', 'workshop', 'more'] as const).find((key) => key === first) ?? 'bench';
+  const rail =
+    (['spares', 'alerts', 'waits', 'workshop', 'more'] as const).find(
+      (key) => key === (first === 'me' ? 'more' : first),
+    ) ?? 'bench';
   return { tab: tabs[bare] ?? null, rail };
 }
 
@@ -57,6 +60,7 @@ export const titles: Readonly<Record<string, string>> = {
   bench: 'Bench',
   plan: 'Plan a charge',
   more: 'More',
+  me: 'Name and password',
   alerts: 'Alerts',
   waits: 'Waits',
   'spares/index': 'Spares',

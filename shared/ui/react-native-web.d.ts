@@ -1,4 +1,0 @@
-declare module 'react-native-web/dist/exports/createElement' {
-  import type { ReactElement } from 'react';
-  export default function createElement(tag: string, props: object): ReactElement;
-}
