@@ -1,5 +1,5 @@
 import { Stack, usePathname, useRouter, type Href } from 'expo-router';
-import { useEffect, useMemo } from 'react';
+import { useCallback, useEffect, useMemo } from 'react';
 import { useAlarmBell } from '@/shared/client/alarm-bell';
 import { isOpen, useAlerts, useOpenAlertCount } from '@/shared/client/alerts';
 import { useLink } from '@/shared/client/link';
@@ -29,7 +29,7 @@ export default function WorkshopLayout() {
   const name = useSession().data?.person.name ?? '';
   const alerts = useOpenAlertCount();
   const seesWaits = useCan('waits:read');
-  const notices = useNotices((url) => router.navigate(url as Href));
+  const notices = useNotices(useCallback((url: string) => router.navigate(url as Href), [router]));
 
   // The socket comes after the first paint.
   useEffect(() => startLive('member'), []);

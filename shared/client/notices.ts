@@ -1,8 +1,8 @@
-import { useCallback, useEffect, useState } from 'react';
+import { useCallback, useEffect } from 'react';
 import { useStore } from './external-store';
 import type { NoticePermission } from './notice-types';
 import { askNoticePermission, noticePermission, onNoticeOpened, showNotice } from './notify';
-import { started } from './notify-state';
+import { permissionStore, started } from './notify-state';
 import { prefer, usePreferences } from './preferences';
 
 export interface Notices {
@@ -19,19 +19,11 @@ export interface Notices {
 
 /** Whether this device may tell what happens while the page is not looked at, and when to ask. */
 export function useNotices(open?: (url: string) => void): Notices {
-  const [permission, setPermission] = useState<NoticePermission | null>(null);
+  const permission = useStore(permissionStore);
   const { noticeAsked } = usePreferences();
   const startedOne = useStore(started);
 
-  useEffect(() => {
-    let gone = false;
-    void noticePermission().then((now) => {
-      if (!gone) setPermission(now);
-    });
-    return () => {
-      gone = true;
-    };
-  }, []);
+  useEffect(() => void noticePermission().then(permissionStore.set), []);
 
   useEffect(() => {
     if (!open || permission !== 'granted') return;
@@ -53,7 +45,7 @@ export function useNotices(open?: (url: string) => void): Notices {
     ask: useCallback(async () => {
       prefer({ noticeAsked: true });
       const answer = await askNoticePermission();
-      setPermission(answer);
+      permissionStore.set(answer);
       return answer;
     }, []),
     decline: useCallback(() => prefer({ noticeAsked: true }), []),

@@ -2,6 +2,7 @@ import { queryOptions, useQuery, type QueryClient } from '@tanstack/react-query'
 import type { Capability, Role } from '@/shared/contract/roles';
 import type {
   ActiveSessionDto,
+  ChangeMeInput,
   CreateWorkshopInput,
   LinkDto,
   SessionDto,
@@ -114,8 +115,9 @@ export const useSignOutEverywhere = () =>
   useWrite({ send: () => orNull(api.delete('/sessions'), [401]), store: (client) => end(client) });
 
 /** Where the person is signed in. */
-export const useSessions = () =>
+export const useSessions = (enabled = true) =>
   useQuery({
+    enabled,
     queryKey: [roots.sessions],
     queryFn: ({ signal }) => api.get<ActiveSessionDto[]>('/sessions', { signal }),
     staleTime: staleTimes.running,
@@ -123,7 +125,7 @@ export const useSessions = () =>
 
 export const useChangeMe = () =>
   useWrite({
-    send: (input: { name?: string; currentPassword?: string; password?: string }) => api.patch<void>('/me', input),
+    send: (input: ChangeMeInput) => api.patch<SessionDto>('/me', input),
     changes: [roots.session, roots.people, roots.sessions],
   });
 

@@ -1,25 +1,17 @@
 import { queryOptions, useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import type { BoardDto } from '@/shared/contract/board';
-import type { WallCodeDto } from '@/shared/contract/wall';
+import type { WallCodeDto, WallMeDto } from '@/shared/contract/wall';
 import { api, orNull } from './api';
 import { serverNow } from './clock';
+import { onLive, useLink } from './link';
 import { startLive } from './live';
-import { useLink } from './link';
+import { newBuildThere } from './new-build';
 import { queryClient } from './query-client';
 import { roots } from './query-keys';
 import { staleTimes } from './stale-times';
 import { recall, remember } from './storage';
 import { pairWall, type PairingState } from './wall-pairing';
-
-/** What a paired screen knows of itself. */
-export interface WallMe {
-  id: string;
-  name: string;
-  diagonalInches: number | null;
-  distanceMetres: number | null;
-  workshop: { id: string; name: string; zone: string };
-}
 
 const pairedKey = 'wall-paired';
 
@@ -29,7 +21,7 @@ export const wallMeQuery = () =>
     queryKey: [roots.wallMe],
     queryFn: async ({ signal }) => {
       if (recall(pairedKey) !== '1') return null;
-      const me = await orNull(api.get<WallMe>('/wall/me', { open: true, signal }), [401, 403]);
+      const me = await orNull(api.get<WallMeDto>('/wall/me', { open: true, signal }), [401, 403]);
       if (!me) remember(pairedKey, null);
       return me;
     },
@@ -45,7 +37,11 @@ export function useWallBoard(enabled: boolean) {
   const { state } = useLink();
   return useQuery({
     queryKey: [roots.board, 'wall'],
-    queryFn: ({ signal }) => api.get<BoardDto>('/wall/board', { open: true, signal }),
+    queryFn: async ({ signal }) => {
+      const board = await orNull(api.get<BoardDto>('/wall/board', { open: true, signal }), [401, 403]);
+      if (!board) unpair();
+      return board;
+    },
     enabled,
     staleTime: staleTimes.running,
     retry: true,
@@ -65,6 +61,19 @@ function unpair(): void {
 /** Keeps a paired wall connected; goes back to the code when its right is taken back. */
 export function useWallLive(paired: boolean): void {
   useEffect(() => (paired ? startLive('wall', unpair) : undefined), [paired]);
+}
+
+/** Loads the page anew when the server came back with another build: nobody stands by to do it. */
+export function useNewBuildReload(): void {
+  useEffect(
+    () =>
+      onLive(() => {
+        void newBuildThere().then((yes) => {
+          if (yes) location.reload();
+        });
+      }),
+    [],
+  );
 }
 
 /** Runs the pairing while the screen is not paired. */

@@ -34,3 +34,10 @@ export const useApproveWall = () =>
 /** Takes a wall's right to read back; its screen shows a code again. */
 export const useRevokeWall = () =>
   useWrite({ send: (id: string) => api.delete(`/walls/${id}`), changes: [roots.walls] });
+
+/** Refuses the screen that shows this code. */
+export const useRefuseWall = () =>
+  useWrite({
+    send: (userCode: string) => api.delete(`/wall/requests/${encodeURIComponent(userCode)}`),
+    changes: [roots.wallRequest],
+  });
