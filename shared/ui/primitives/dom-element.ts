@@ -1,4 +1,3 @@
-/// <reference path="../react-native-web.d.ts" />
 import type { ReactElement, ReactNode } from 'react';
 // The one place that asks the web renderer for an element React Native has no primitive for.
 // @ts-expect-error -- the renderer ships no types
