@@ -1,12 +1,13 @@
 import { voltsAtSoc } from '../curve/ocv';
 import type { TracePlanPoint } from '../plan-types';
 import type { TracePoint } from '../types';
-import type { Clock } from './clock';
+import { roundsOf, type Clock } from './clock';
 import type { DraftStep } from './draft';
 import type { PlanModel } from './plan-model';
 
 const CURRENT_POINTS = 60;
 const REST_POINTS = 10;
+const LEAST_POINTS = 4;
 
 /**
  * The picture of the likely run: amps, volts under current and rest volts from the clip-on to the end of the rest, at most
@@ -21,30 +22,61 @@ export function toTrace(
   spread: { shortest: number; longest: number },
 ): TracePlanPoint[] {
   const points: TracePlanPoint[] = [];
-  const currentS = steps.reduce((sum, step) => sum + step.seconds, 0);
-  let soc = model.startSoc;
-  const order = steps.map((_, at) => at).sort((a, b) => clock.startS[a]! - clock.startS[b]! || a - b);
-  for (const at of order) {
-    const step = steps[at]!;
-    const count = Math.max(4, Math.round((CURRENT_POINTS * step.seconds) / Math.max(currentS, 1)));
-    for (const point of thinned(step.trace, Math.min(count, CURRENT_POINTS / Math.max(1, steps.length / 20)))) {
-      const now = [...soc];
-      step.groupIndexes.forEach((group, place) => (now[group] = point.soc[Math.min(place, point.soc.length - 1)]!));
-      points.push({
-        s: clock.startS[at]! + point.s,
-        amps: point.amps,
-        clipVolts: point.terminalVolts / step.groupsAcross,
-        restVolts: meanVolts(model, now),
-      });
-    }
-    soc = steps[at]!.socAfter;
+  const currentS = clock.currentEndS - clock.currentStartS;
+  let soc: readonly number[] = model.startSoc;
+  for (const round of roundsOf(steps)) {
+    const own = round.map((at) => steps[at]!).filter((step) => step.trace.length > 0);
+    if (own.length === 0) continue;
+    const longest = own.reduce((most, step) => (step.seconds > most.seconds ? step : most));
+    const share = Math.max(LEAST_POINTS, Math.round((CURRENT_POINTS * longest.seconds) / Math.max(currentS, 1)));
+    const before = soc;
+    for (const { s } of thinned(longest.trace, Math.min(share, CURRENT_POINTS / Math.ceil(steps.length / 12))))
+      points.push(pointAt(model, own, before, s, clock.startS[round[0]!]! + s));
+    soc = steps[round[round.length - 1]!]!.socAfter;
   }
   if (points.length === 0) return [];
-  points.sort((a, b) => a.s - b.s);
-  const kept = thinned(points, 120 - REST_POINTS - 1);
+  const kept = thinned(points, 120 - REST_POINTS - 2);
   addBand(kept, clock, spread);
   addRest(model, steps, clock, kept);
   return kept.map(rounded);
+}
+
+/** One moment of a round: steps side by side add their amps, and their clip volts are the mean of theirs. */
+function pointAt(
+  model: PlanModel,
+  round: DraftStep[],
+  before: readonly number[],
+  s: number,
+  atS: number,
+): TracePlanPoint {
+  const soc = [...before];
+  let amps = 0;
+  let clipVolts = 0;
+  for (const step of round) {
+    const point = interpolated(step.trace, s);
+    step.groupIndexes.forEach((group, at) => (soc[group] = point.soc[Math.min(at, point.soc.length - 1)]!));
+    amps += point.amps;
+    clipVolts += point.terminalVolts / step.groupsAcross / round.length;
+  }
+  return { s: atS, amps, clipVolts, restVolts: meanVolts(model, soc) };
+}
+
+/** A step's course at one moment, straight between its points; after its end without current. */
+function interpolated(trace: TracePoint[], s: number): TracePoint {
+  const last = trace[trace.length - 1]!;
+  if (s > last.s + 1e-6) return { ...last, s, amps: 0 };
+  const next = trace.findIndex((point) => point.s >= s);
+  if (next <= 0) return next < 0 ? last : trace[0]!;
+  const a = trace[next - 1]!;
+  const b = trace[next]!;
+  const part = b.s === a.s ? 1 : (s - a.s) / (b.s - a.s);
+  const between = (from: number, to: number): number => from + (to - from) * part;
+  return {
+    s,
+    amps: between(a.amps, b.amps),
+    terminalVolts: between(a.terminalVolts, b.terminalVolts),
+    soc: a.soc.map((from, at) => between(from, b.soc[at]!)),
+  };
 }
 
 function meanVolts(model: PlanModel, soc: readonly number[]): number {
