@@ -42,8 +42,9 @@ function sendFile(
   let sent = file;
   if (encodings.length > 0) {
     response.vary('Accept-Encoding');
-    const encoding = request.acceptsEncodings([...encodings, 'identity']);
-    if (encoding === 'br' || encoding === 'gzip') {
+    // The smaller one that is taken; browsers name them in no order of preference.
+    const encoding = encodings.find((offered) => request.acceptsEncodings(offered) === offered);
+    if (encoding) {
       response.set('Content-Encoding', encoding);
       sent = file + suffixes[encoding];
     }
@@ -84,7 +85,7 @@ export function webApp(folder: string): WebApp {
       sendFile(response, address, found, next);
       return;
     }
-    const isScreen = !/^\/(api|_expo|assets|socket\.io)(\/|$)/.test(address) && path.extname(address) === '';
+    const isScreen = !/^\/(api|_expo|assets|socket\.io)(\/|$)/.test(address) && !/\.[^/]*$/.test(address);
     if (!isScreen || !request.accepts('html')) {
       next();
       return;
