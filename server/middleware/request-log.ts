@@ -13,7 +13,10 @@ const secretNames = [
   'cookie',
   'authorization',
   'set-cookie',
-  'url_with_token',
+  // A failed query tells its parameters: hashes, addresses, whatever was typed.
+  'parameters',
+  'passwordHash',
+  'tokenHash',
 ];
 const redactPaths = secretNames.flatMap((name) => [
   `["${name}"]`,
@@ -28,6 +31,8 @@ export function makeLog(level: string, destination?: DestinationStream): Logger 
     level,
     base: { app: 'bidewell' },
     timestamp: pino.stdTimeFunctions.isoTime,
+    // Errors are written out under either name.
+    serializers: { err: pino.stdSerializers.err, error: pino.stdSerializers.err },
     redact: { paths: redactPaths, censor: '[left out]' },
   };
   return destination ? pino(options, destination) : pino(options);
