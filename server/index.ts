@@ -1,7 +1,7 @@
 /** The process: reads the environment, starts the server, and ends it properly. */
 import { readConfig } from './config';
 import { makeLog } from './middleware/request-log';
-import { startServer } from './start-server';
+import { startServer, type RunningServer } from './start-server';
 
 function readConfigOrExit() {
   try {
@@ -24,18 +24,24 @@ const fail = (what: string) => (error: unknown) => {
 process.on('unhandledRejection', fail('a promise failed and nobody listened'));
 process.on('uncaughtException', fail('an error was caught by nobody'));
 
+// What the server writes is for its owner: the database holds hashes of passwords.
+process.umask(0o077);
+
+let running: RunningServer | null = null;
+let stopping = false;
+for (const signal of ['SIGTERM', 'SIGINT'] as const) {
+  process.on(signal, () => {
+    // A second signal, or one before anything runs: nothing to wait for.
+    if (stopping || !running) process.exit(stopping ? 1 : 0);
+    stopping = true;
+    log.info({ signal }, 'stopping');
+    running.stop().then(() => process.exit(0), fail('the server did not stop properly'));
+  });
+}
+
 try {
-  const running = await startServer(config, log);
+  running = await startServer(config, log);
   log.info({ address: running.address, demo: config.demo, dataDir: config.dataDir }, 'ready');
-  let stopping = false;
-  for (const signal of ['SIGTERM', 'SIGINT'] as const) {
-    process.on(signal, () => {
-      if (stopping) process.exit(1);
-      stopping = true;
-      log.info({ signal }, 'stopping');
-      running.stop().then(() => process.exit(0), fail('the server did not stop properly'));
-    });
-  }
 } catch (error) {
   fail('the server did not start')(error);
 }

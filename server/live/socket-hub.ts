@@ -15,6 +15,8 @@ export interface SocketHub extends LiveHub {
   attach(server: HttpServer): void;
   /** One round of the heartbeat, as the timer does it. */
   beat(): Promise<void>;
+  /** The events that the sockets connected now listen to, by the kind of who asks; for the test of their policies. */
+  listenedEvents(): Partial<Record<SocketAsker['kind'], string[]>>;
   /** Closes all sockets; clients come back by themselves when a server answers again. Closes the attached server too. */
   close(): Promise<void>;
 }
@@ -29,6 +31,9 @@ const wallEvents: ReadonlySet<LiveEvent> = new Set<LiveEvent>([
   'heartbeat',
   'session:ended',
 ]);
+
+/** What the library itself tells a socket; no client can send these. */
+const ownEvents: ReadonlySet<string> = new Set(['disconnect', 'error']);
 
 const rooms = {
   members: (workshopId: string) => `members ${workshopId}`,
@@ -167,6 +172,15 @@ export function makeSocketHub(deps: HubDeps): SocketHub {
     },
     attach: (server) => void io.attach(server),
     beat,
+    listenedEvents: () => {
+      const events: Partial<Record<SocketAsker['kind'], string[]>> = {};
+      for (const socket of io.sockets.sockets.values())
+        events[socket.data.asker.kind] = socket
+          .eventNames()
+          .map(String)
+          .filter((name) => !ownEvents.has(name));
+      return events;
+    },
     close: async () => {
       if (timer) clearInterval(timer);
       timer = null;
