@@ -9,7 +9,11 @@ export const wallPicture = { width: 1920, height: 1080 } as const;
 /** How much larger or smaller a window shows the picture, and how much room there is in the picture's own px. */
 export function stageOf(window: { width: number; height: number }): { scale: number; width: number; height: number } {
   const scale = Math.min(window.width / wallPicture.width, window.height / wallPicture.height) || 1;
-  return { scale, width: window.width / scale, height: window.height / scale };
+  return {
+    scale,
+    width: Math.max(wallPicture.width, window.width / scale),
+    height: Math.max(wallPicture.height, window.height / scale),
+  };
 }
 
 /** The stage in px of the picture; children lay themselves out on at least 1920 × 1080. */
