@@ -31,6 +31,8 @@ export interface Lane {
   index: number;
   step: PlannedStep;
   sign: 1 | -1;
+  /** On the mark trickles on after its end without harm: amps up to here say nothing; 0: any current after the end counts. */
+  trickleAmps: number;
   /** Groups whose state the current moves. */
   touched: number[];
   /** Current the model has at a state, positive. */

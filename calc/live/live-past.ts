@@ -36,8 +36,6 @@ export interface LanePast {
 /** Below this share of the set current, or of the planned end current, a reading says that none flows. */
 const ZERO_OF_SET = 0.01;
 const ZERO_OF_END = 0.5;
-/** On the mark trickles on after its end: up to this multiple of the planned end current nothing is wrong. */
-const TRICKLE = 1.5;
 /** A model current this near to the set one is constant current. */
 const CONSTANT_SHARE = 0.97;
 
@@ -88,7 +86,7 @@ const restTouched = (model: PlanModel, lane: Lane, state: ModuleState, toS: numb
 function takeReading(model: PlanModel, lane: Lane, past: LanePast, before: number | null, reading: AmpsReading): void {
   const { s, amps } = reading;
   const zero = amps <= zeroBelow(lane);
-  const trickle = lane.step.setVolts !== null && amps <= Math.abs(lane.step.endAmps) * TRICKLE;
+  const trickle = amps <= lane.trickleAmps;
   const seconds = s - past.state.s;
   if (past.endedAtS !== null && (zero || trickle)) {
     past.state = restTouched(model, lane, past.state, s);

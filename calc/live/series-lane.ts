@@ -10,6 +10,8 @@ import type { ModuleState } from './module-state';
 /** On the mark: the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
 const END_AMPS_SHARE = 0.98;
 const LEAST_END_AMPS = 1e-3;
+/** Times the planned end current that may still flow once on the mark is reached. */
+const TRICKLE = 1.5;
 
 /** A step on a charger or load, run by the core. */
 export function seriesLane(model: PlanModel, step: PlannedStep, index: number, channel: ChannelParameters): Lane {
@@ -44,6 +46,8 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
   };
   const efficiency = sign > 0 ? model.efficiency : 1;
 
+  const count = joined ? 1 : step.groupIndexes.length;
+  const onTheMark = source.setVolts !== null && Math.abs(source.setVolts - aimVolts) <= model.toleranceVolts * count;
   const tapers = source.setVolts !== null && endsByAmps(step);
   const forward = (state: ModuleState, drive: Drive, maxSeconds: number | null, onwards = false): Forward => {
     const groups = groupsOf(state);
@@ -95,6 +99,7 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     index,
     step,
     sign,
+    trickleAmps: onTheMark ? TRICKLE * Math.abs(step.endAmps) : 0,
     touched: step.groupIndexes,
     forward,
     ampsAt: (state, drive) => {
