@@ -45,6 +45,9 @@ const CONSTANT_SHARE = 0.97;
  * Between two readings of the current the charge is the trapezium, or in a taper the logarithmic mean from where the model has
  * it begin; the first reading of a stretch counts back to its start; after the last one the model runs on with what that
  * reading has shown. Without readings it is the model as set.
+ *
+ * @param saidOff the last stretch ends when a person has switched off: it flowed until then, whatever was reckoned, since no
+ * charger stops by itself
  */
 export function lanePast(
   model: PlanModel,
@@ -53,6 +56,7 @@ export function lanePast(
   stretches: Stretch[],
   readings: AmpsReading[],
   nowS: number,
+  saidOff = false,
 ): LanePast {
   const past: LanePast = {
     state: start,
@@ -74,7 +78,7 @@ export function lanePast(
       takeReading(model, lane, past, before, reading);
       before = reading.amps;
     }
-    runOn(model, lane, past, endS);
+    runOn(model, lane, past, endS, saidOff && toS === stretches[stretches.length - 1]!.toS);
   }
   past.state = restTouched(model, lane, past.state, nowS);
   return past;
@@ -126,15 +130,16 @@ function takeReading(model: PlanModel, lane: Lane, past: LanePast, before: numbe
 }
 
 /** The model from the last reading (or the start) of a stretch to its end. */
-function runOn(model: PlanModel, lane: Lane, past: LanePast, endS: number): void {
+function runOn(model: PlanModel, lane: Lane, past: LanePast, endS: number, onwards: boolean): void {
   const seconds = endS - past.state.s;
   if (past.noCurrent || past.endedAtS !== null) {
     past.state = restTouched(model, lane, past.state, endS);
     past.amps = 0;
     return;
   }
-  const ahead = lane.forward(past.state, past.drive, Math.max(0, seconds), past.overrun);
-  if (ahead.ended && !past.overrun) {
+  const believed = past.overrun || onwards;
+  const ahead = lane.forward(past.state, past.drive, Math.max(0, seconds), believed);
+  if (ahead.ended && !believed) {
     end(model, lane, past, ahead.seconds, ahead.state, ahead.ampHours, ahead.taperAfterS);
     past.state = restTouched(model, lane, past.state, endS);
     return;

@@ -54,7 +54,7 @@ export function livePast(model: PlanModel, input: ReplayInput, nowS: number): Li
   for (let round = 0; round <= lastRound; round += 1) {
     const own = runs.filter((run) => roundOf(rounds, run) === round);
     const untilS = round < lastRound ? Math.max(past.state.s, ...own.map((run) => run.toS ?? nowS)) : nowS;
-    liveRound(model, input, past, round, own, Math.min(untilS, nowS));
+    liveRound(model, input, past, round, own, Math.min(untilS, nowS), round === lastRound && off < Infinity);
   }
   past.state = rested(model, past.state, nowS);
   return past;
@@ -67,6 +67,7 @@ function liveRound(
   round: number,
   runs: RunStretch[],
   untilS: number,
+  saidOff: boolean,
 ): void {
   const { option } = input;
   const steps = past.rounds[round]!;
@@ -76,7 +77,9 @@ function liveRound(
   const total = lanes.reduce((sum, lane) => sum + (lane.step.setAmps ?? 0), 0);
   const pasts = lanes.map((lane) => {
     const share = lanes.length === 1 || total === 0 ? 1 / lanes.length : (lane.step.setAmps ?? 0) / total;
-    return lanePast(model, lane, start, stretches, ampsReadings(input.readings, share, lanes.length === 1), untilS);
+    const seen = ampsReadings(input.readings, share, lanes.length === 1);
+    // Of clips side by side it is not known which of them was switched off last.
+    return lanePast(model, lane, start, stretches, seen, untilS, saidOff && lanes.length === 1);
   });
   past.state = merged(model, start, lanes, pasts, untilS);
   lanes.forEach((lane, at) => addMoved(model, past, lane, pasts[at]!.deliveredAh));
