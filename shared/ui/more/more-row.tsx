@@ -2,8 +2,8 @@ import type { ReactNode } from 'react';
 import { Pressable, View } from 'react-native';
 import { Icon } from '../icons/icon';
 import type { IconName } from '../icons/icon-paths';
+import { goInside } from '../primitives/pressable-link';
 import { Txt } from '../primitives/txt';
-import { goInside } from '../screen/nav-items';
 import { makeStyles } from '../theme/make-styles';
 import { touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
@@ -27,8 +27,8 @@ export function MoreRow({ title, value, meaning, icon, href, onPress }: MoreRowP
   return (
     <Pressable
       role={href ? 'link' : 'button'}
-      {...web(href ? { href, onClick: goInside(onPress), dataSet: { press: '' } } : { dataSet: { press: '' } })}
-      onPress={href ? undefined : onPress}
+      {...web(href ? { href, dataSet: { press: '' } } : { dataSet: { press: '' } })}
+      onPress={href ? goInside(onPress) : onPress}
       style={({ pressed }) => [styles.row, pressed && styles.pressed]}
     >
       {icon ? <Icon name={icon} size={24} tone="ink2" /> : null}

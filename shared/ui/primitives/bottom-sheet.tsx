@@ -87,7 +87,8 @@ const useStyles = makeStyles(({ colors, name }) => ({
     borderTopWidth: 1,
     borderTopColor: colors.line,
     paddingTop: 10,
-    paddingBottom: 16,
+    // Outside the margin: the strip a phone keeps for its own gesture.
+    paddingBottom: 'calc(16px + env(safe-area-inset-bottom))' as unknown as number,
     boxShadow: '0 -8px 24px rgba(28,26,21,0.10)',
   },
   head: {

@@ -1,6 +1,7 @@
 import { Pressable, StyleSheet, type StyleProp, type TextStyle, type ViewStyle } from 'react-native';
 import { touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
+import { goInside } from './pressable-link';
 import { useSoftDisabled } from './pressing';
 import { Txt, type TextTone } from './txt';
 
@@ -35,23 +36,14 @@ export function Link({
   style?: StyleProp<ViewStyle>;
 }) {
   const own = useSoftDisabled(disabled);
-  const address = href
-    ? {
-        href,
-        onClick: (event: { preventDefault(): void; metaKey?: boolean; ctrlKey?: boolean; shiftKey?: boolean }) => {
-          if (!onPress || event.metaKey || event.ctrlKey || event.shiftKey) return;
-          event.preventDefault();
-          onPress();
-        },
-      }
-    : null;
+  const press = href ? (onPress ? goInside(onPress) : undefined) : onPress;
   return (
     <Pressable
       ref={own}
       role={href ? 'link' : 'button'}
       aria-label={label}
-      onPress={disabled || href ? undefined : onPress}
-      {...web(address ?? {})}
+      onPress={disabled ? undefined : press}
+      {...web(href && !disabled ? { href } : {})}
       style={[styles.target, tight && styles.tight, align === 'right' && styles.right, style]}
     >
       <Txt kind={kind} tone={disabled ? 'ink3' : tone} nowrap style={styles.word}>

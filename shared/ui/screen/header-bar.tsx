@@ -29,7 +29,7 @@ export function HeaderBar({ title, sub, onBack, backLabel = 'Back', clock, tools
   const styles = useStyles();
   const wide = useBreakpoint() === 'wide';
   return (
-    <View role="banner" style={[styles.bar, wide && styles.wideBar]}>
+    <View style={[styles.bar, wide && styles.wideBar]}>
       {onBack ? (
         <View style={styles.back}>
           <IconButton icon="back" size={wide ? 30 : 28} label={backLabel} onPress={onBack} />

@@ -18,17 +18,3 @@ export interface NavProps {
 
 /** What a screen reader hears of an item. */
 export const navLabel = ({ title, count }: NavItem): string => (count ? `${title}, ${count} open` : title);
-
-interface LinkClick {
-  preventDefault(): void;
-  metaKey?: boolean;
-  ctrlKey?: boolean;
-  shiftKey?: boolean;
-}
-
-/** A tap goes inside the app; with Ctrl, Shift or the command key the browser opens its own tab. */
-export const goInside = (go: () => void) => (event: LinkClick) => {
-  if (event.metaKey || event.ctrlKey || event.shiftKey) return;
-  event.preventDefault();
-  go();
-};

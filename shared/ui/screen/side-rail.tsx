@@ -1,13 +1,13 @@
-import { Pressable, View } from 'react-native';
+import { View } from 'react-native';
 import { BrandMark } from '../icons/brand-mark';
 import { Icon } from '../icons/icon';
 import { Badge } from '../primitives/badge';
+import { PressableLink } from '../primitives/pressable-link';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { widths } from '../theme/tokens';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { web } from '../theme/web-props';
-import { goInside, navLabel, type NavItem, type NavProps } from './nav-items';
+import { navLabel, type NavItem, type NavProps } from './nav-items';
 
 /** The rail of tablet (72 px) and desk (92 px), words under the icons, the person at its foot. */
 export function SideRail({ items, current, onGo, person }: NavProps & { person?: NavItem }) {
@@ -34,15 +34,11 @@ export function SideRail({ items, current, onGo, person }: NavProps & { person?:
 function RailItem({ item, on, onGo }: { item: NavItem; on: boolean; onGo: NavProps['onGo'] }) {
   const styles = useStyles();
   return (
-    <Pressable
-      role="link"
-      aria-label={navLabel(item)}
-      {...web({
-        href: item.href,
-        onClick: goInside(() => onGo(item)),
-        'aria-current': on ? 'page' : undefined,
-        dataSet: { press: '' },
-      })}
+    <PressableLink
+      href={item.href}
+      onGo={() => onGo(item)}
+      label={navLabel(item)}
+      current={on}
       style={({ pressed }) => [styles.item, pressed && styles.pressed]}
     >
       {on ? <View style={styles.mark} /> : null}
@@ -55,7 +51,7 @@ function RailItem({ item, on, onGo }: { item: NavItem; on: boolean; onGo: NavPro
       <Txt kind="small" tone={on ? 'ink' : 'ink2'} bold={on} align="center" numberOfLines={1} style={styles.word}>
         {item.title}
       </Txt>
-    </Pressable>
+    </PressableLink>
   );
 }
 

@@ -1,10 +1,10 @@
-import { Pressable, View } from 'react-native';
+import { View } from 'react-native';
 import { Icon } from '../icons/icon';
 import { Badge } from '../primitives/badge';
+import { PressableLink } from '../primitives/pressable-link';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
-import { web } from '../theme/web-props';
-import { goInside, navLabel, type NavProps } from './nav-items';
+import { navLabel, type NavProps } from './nav-items';
 
 /** The phone's bottom bar: 72 px, five places. Not shown inside a task. */
 export function TabBar({ items, current, onGo }: NavProps) {
@@ -14,16 +14,12 @@ export function TabBar({ items, current, onGo }: NavProps) {
       {items.map((item) => {
         const on = item.key === current;
         return (
-          <Pressable
+          <PressableLink
             key={item.key}
-            role="link"
-            aria-label={navLabel(item)}
-            {...web({
-              href: item.href,
-              onClick: goInside(() => onGo(item)),
-              'aria-current': on ? 'page' : undefined,
-              dataSet: { press: '' },
-            })}
+            href={item.href}
+            onGo={() => onGo(item)}
+            label={navLabel(item)}
+            current={on}
             style={({ pressed }) => [styles.tab, pressed && styles.pressed]}
           >
             {on ? <View style={styles.mark} /> : null}
@@ -36,7 +32,7 @@ export function TabBar({ items, current, onGo }: NavProps) {
             <Txt kind="small" tone={on ? 'ink' : 'ink2'} bold={on} nowrap style={styles.word}>
               {item.title}
             </Txt>
-          </Pressable>
+          </PressableLink>
         );
       })}
     </View>

@@ -6,11 +6,12 @@ const sheetId = 'bw-page';
 
 /**
  * What React Native styles cannot say: the focus ring of everything that takes the keyboard, tabular numerals in
- * drawings, the system's colours by name. Where the system forces its colours the theme already speaks in them, so
+ * drawings, the notches of phones outside the margins, the system's colours by name. Where the system forces its colours the theme already speaks in them, so
  * that the browser need not repaint. `:where` keeps it weaker than any style of a component.
  */
 const rules = `
 :root{--bw-canvas:Canvas;--bw-canvas-text:CanvasText;--bw-highlight:Highlight;--bw-gray:GrayText}
+body{box-sizing:border-box;padding:env(safe-area-inset-top) env(safe-area-inset-right) env(safe-area-inset-bottom) env(safe-area-inset-left)}
 html{font-variant-numeric:tabular-nums;font-family:${faceStacks.text};-webkit-text-size-adjust:100%;text-size-adjust:100%}
 :where(:focus-visible){outline:3px solid var(--bw-focus);outline-offset:-3px}
 :where([data-focus="none"]):focus-visible,:where(input,select,textarea):focus-visible{outline:none}
@@ -21,9 +22,30 @@ html{font-variant-numeric:tabular-nums;font-family:${faceStacks.text};-webkit-te
 
 const hasPage = typeof document !== 'undefined';
 
-/** Writes the theme into the page around the components: ground, focus colour, the browser's own bars. */
-export function applyPageTheme(theme: Theme): void {
-  if (!hasPage) return;
+interface Layer {
+  depth: number;
+  theme: Theme;
+}
+const layers = new Set<Layer>();
+
+/**
+ * Writes a theme into the page around the components: ground, focus colour, the browser's own bars. The innermost
+ * provider wins while it is there (the wall inside the app). Returns how to take it away again.
+ */
+export function applyPageTheme(theme: Theme, depth: number): () => void {
+  const layer = { depth, theme };
+  layers.add(layer);
+  write();
+  return () => {
+    layers.delete(layer);
+    write();
+  };
+}
+
+function write(): void {
+  const innermost = [...layers].sort((a, b) => b.depth - a.depth)[0];
+  if (!hasPage || !innermost) return;
+  const { theme } = innermost;
   let sheet = document.getElementById(sheetId);
   if (!sheet) {
     sheet = document.createElement('style');

@@ -1,4 +1,4 @@
-import { createContext, useContext, useEffect, useMemo, type ReactNode } from 'react';
+import { createContext, useContext, useLayoutEffect, useMemo, type ReactNode } from 'react';
 import { useColorScheme } from 'react-native';
 import { applyPageTheme, useForcedColors } from './page-theme';
 import { palettes, type ColorRole, type Palette, type ThemeName } from './tokens';
@@ -31,6 +31,7 @@ const system = (name: ThemeName): Theme => {
 const forcedThemes: Record<ThemeName, Theme> = { paper: system('paper'), night: system('night') };
 
 const ThemeContext = createContext<Theme>(paper);
+const DepthContext = createContext(0);
 
 /**
  * Gives the theme to what is inside.
@@ -42,8 +43,14 @@ export function ThemeProvider({ choice = 'system', children }: { choice?: ThemeN
   const forced = useForcedColors();
   const name: ThemeName = choice === 'system' ? (scheme === 'dark' ? 'night' : 'paper') : choice;
   const theme = useMemo(() => (forced ? forcedThemes[name] : name === 'night' ? night : paper), [forced, name]);
-  useEffect(() => applyPageTheme(theme), [theme]);
-  return <ThemeContext.Provider value={theme}>{children}</ThemeContext.Provider>;
+  const depth = useContext(DepthContext);
+  // Before the first paint, or the page would flash in the other theme.
+  useLayoutEffect(() => applyPageTheme(theme, depth), [theme, depth]);
+  return (
+    <DepthContext.Provider value={depth + 1}>
+      <ThemeContext.Provider value={theme}>{children}</ThemeContext.Provider>
+    </DepthContext.Provider>
+  );
 }
 
 /** The theme in force: colours by role. */

@@ -84,6 +84,19 @@ describe('theme', () => {
     expect(container.textContent).toBe('night #0C1113 sheet');
     expect(document.documentElement.style.colorScheme).toBe('dark');
   });
+
+  it('lets the innermost provider dress the page, and gives it back when that one goes', () => {
+    const page = (wall: boolean) => (
+      <ThemeProvider choice="paper">
+        {wall ? <ThemeProvider choice="night">wall</ThemeProvider> : 'bench'}
+      </ThemeProvider>
+    );
+    const { rerender, unmount } = render(page(true));
+    expect(document.documentElement.style.colorScheme).toBe('dark');
+    rerender(page(false));
+    expect(document.documentElement.style.colorScheme).toBe('light');
+    unmount();
+  });
 });
 
 describe('OfflineStrip', () => {
