@@ -1,0 +1,245 @@
+import { spawn, type ChildProcess } from 'node:child_process';
+import fs from 'node:fs';
+import http from 'node:http';
+import net from 'node:net';
+import os from 'node:os';
+import path from 'node:path';
+import Database from 'better-sqlite3';
+import request from 'supertest';
+import { DataSource, type MigrationInterface, type QueryRunner } from 'typeorm';
+import { build } from 'esbuild';
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import type { Config } from '@/server/config';
+import { makeDataSource } from '@/server/data-source';
+import { databaseFile } from '@/server/data-files';
+import { makeLog } from '@/server/middleware/request-log';
+import { migrate } from '@/server/migrate';
+import { migrations } from '@/server/migrations/all';
+import { startServer, type RunningServer } from '@/server/start-server';
+import { cookiesOf } from '@/tests/support/cookies';
+
+const root = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-start-'));
+afterAll(() => fs.rmSync(root, { recursive: true, force: true }));
+let folders = 0;
+const newFolder = () => path.join(root, String(++folders));
+const log = makeLog('silent');
+const configFor = (dataDir: string, change: Partial<Config> = {}): Config => ({
+  port: 0,
+  host: '127.0.0.1',
+  dataDir,
+  webDir: '/nonexistent',
+  demo: false,
+  tls: null,
+  proxyHops: 0,
+  publicUrl: null,
+  logLevel: 'silent',
+  metroPort: null,
+  ...change,
+});
+
+const running: RunningServer[] = [];
+const start = async (dataDir: string, change?: Partial<Config>) => {
+  const server = await startServer(configFor(dataDir, change), log);
+  running.push(server);
+  return server;
+};
+afterEach(async () => {
+  for (const server of running.splice(0)) await server.stop();
+});
+const workshop = {
+  workshopName: 'Quay Street Cells',
+  zone: 'Europe/Lisbon',
+  name: 'Alva Reis',
+  email: 'alva@example.com',
+  password: 'seven lamps over the slipway',
+};
+const mode = (file: string) => (fs.statSync(file).mode & 0o777).toString(8);
+
+describe('the first start', () => {
+  it('makes the data folder, the secret for its owner only, the tables, and is ready', async () => {
+    const folder = newFolder();
+    const server = await start(folder);
+    expect(mode(folder)).toBe('700');
+    expect(mode(path.join(folder, 'secret.key'))).toBe('600');
+    const agent = request(server.address);
+    expect((await agent.get('/readyz')).body).toEqual({ status: 'ready' });
+    expect((await agent.get('/api/front-door')).body).toMatchObject({ empty: true });
+  });
+
+  it('serves a person from real bcrypt to a session, which the next start still knows', async () => {
+    const folder = newFolder();
+    const first = await start(folder);
+    const created = await request(first.address).post('/api/workshops').send(workshop);
+    expect(created.status).toBe(201);
+    const cookie = Object.entries(cookiesOf(created))
+      .map(([name, { value }]) => `${name}=${value}`)
+      .join('; ');
+    const { email, password } = workshop;
+    expect((await request(first.address).post('/api/session').send({ email, password })).status).toBe(200);
+    expect((await request(first.address).post('/api/session').send({ email, password: 'not this' })).status).toBe(401);
+    await first.stop();
+    running.pop();
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key']);
+    const second = await start(folder);
+    expect((await request(second.address).get('/api/session').set('Cookie', cookie)).body.person.email).toBe(email);
+  });
+
+  it('is refused with what to do where the port is taken or the address is not of this machine', async () => {
+    const taken = net.createServer().listen(0, '127.0.0.1');
+    await new Promise((resolve) => taken.once('listening', resolve));
+    const { port } = taken.address() as net.AddressInfo;
+    await expect(start(newFolder(), { port })).rejects.toThrow(`Port ${port} is taken`);
+    await expect(start(newFolder(), { host: '203.0.113.254' })).rejects.toThrow('BIDEWELL_HOST');
+    await new Promise((resolve) => taken.close(resolve));
+  });
+
+  it('is refused where the secret is damaged, rather than making every session void in silence', async () => {
+    const folder = newFolder();
+    await (await start(folder)).stop();
+    running.pop();
+    fs.writeFileSync(path.join(folder, 'secret.key'), 'short');
+    await expect(start(folder)).rejects.toThrow('damaged');
+  });
+});
+
+class Later9999999999999 implements MigrationInterface {
+  readonly name = 'Later9999999999999';
+  async up(runner: QueryRunner): Promise<void> {
+    await runner.query('CREATE TABLE later (id varchar PRIMARY KEY)');
+  }
+  async down(runner: QueryRunner): Promise<void> {
+    await runner.query('DROP TABLE later');
+  }
+}
+
+describe('a migration', () => {
+  it('of a database that holds something begins with a copy of it', async () => {
+    const folder = newFolder();
+    const first = await start(folder);
+    await request(first.address).post('/api/workshops').send(workshop);
+    await first.stop();
+    running.pop();
+    expect(fs.existsSync(path.join(folder, 'backups'))).toBe(false);
+
+    const later = await new DataSource({
+      ...makeDataSource(databaseFile(folder)).options,
+      migrations: [...migrations, Later9999999999999],
+    }).initialize();
+    expect(await migrate(later, folder, Date.now(), log)).toEqual(['Later9999999999999']);
+    expect(await migrate(later, folder, Date.now(), log)).toEqual([]);
+    await later.destroy();
+    const backups = fs.readdirSync(path.join(folder, 'backups'));
+    expect(backups).toHaveLength(1);
+    const copy = new Database(path.join(folder, 'backups', backups[0] ?? ''), { readonly: true });
+    expect(copy.prepare('SELECT email FROM person').all()).toEqual([{ email: 'alva@example.com' }]);
+    expect(copy.prepare("SELECT name FROM sqlite_master WHERE name = 'later'").all()).toEqual([]);
+    copy.close();
+
+    // And the version before it does not touch what it does not know.
+    await expect(start(folder)).rejects.toThrow('later version');
+  });
+});
+
+// The process itself, bundled as `npm run build` does it: so its worker threads are found there, too.
+const bundle = path.join(process.cwd(), 'node_modules/.cache/bidewell-start-test');
+const children: ChildProcess[] = [];
+beforeAll(async () => {
+  await build({
+    entryPoints: [
+      { in: 'server/index.ts', out: 'main' },
+      { in: 'server/workers/bcrypt.ts', out: 'workers/bcrypt' },
+    ],
+    outdir: bundle,
+    bundle: true,
+    platform: 'node',
+    target: 'node20',
+    format: 'esm',
+    packages: 'external',
+    keepNames: true,
+    tsconfig: 'server/tsconfig.json',
+    logLevel: 'error',
+  });
+});
+afterAll(() => {
+  for (const child of children) if (child.exitCode === null) child.kill('SIGKILL');
+  fs.rmSync(bundle, { recursive: true, force: true });
+});
+
+function spawnServer(folder: string, env: Record<string, string> = {}) {
+  const child = spawn(process.execPath, [path.join(bundle, 'main.js')], {
+    env: { ...process.env, PORT: '0', BIDEWELL_DATA: folder, BIDEWELL_DEMO: 'off', BIDEWELL_HOST: '127.0.0.1', ...env },
+    stdio: ['ignore', 'pipe', 'pipe'],
+  });
+  children.push(child);
+  let output = '';
+  child.stdout.on('data', (chunk: Buffer) => (output += chunk.toString()));
+  child.stderr.on('data', (chunk: Buffer) => (output += chunk.toString()));
+  const exit = new Promise<number | null>((resolve) => child.once('exit', resolve));
+  /** Waits until the process has written something of this form; gives its first group. */
+  const said = async (form: RegExp): Promise<string> => {
+    for (;;) {
+      const found = form.exec(output);
+      if (found) return found[1] ?? '';
+      if (child.exitCode !== null) throw new Error(`The server ended: ${output}`);
+      await new Promise((resolve) => setTimeout(resolve, 20));
+    }
+  };
+  return { child, exit, said, output: () => output };
+}
+
+/** Begins to send a body and stops half way, when the server has read the head and asked for more. */
+async function halfARequest(address: string) {
+  const { hostname, port } = new URL(address);
+  const body = JSON.stringify(workshop);
+  const headers = {
+    'content-type': 'application/json',
+    'content-length': Buffer.byteLength(body),
+    expect: '100-continue',
+  };
+  const sent = http.request({ hostname, port, path: '/api/workshops', method: 'POST', headers });
+  const status = new Promise<number>((resolve, reject) => {
+    sent.on('response', (response) => resolve(response.resume().statusCode ?? 0));
+    sent.on('error', reject);
+  });
+  status.catch(() => {});
+  await new Promise((resolve) => {
+    sent.once('continue', resolve);
+    sent.flushHeaders();
+  });
+  sent.write(body.slice(0, 20));
+  return { status, finish: () => sent.end(body.slice(20)) };
+}
+
+describe('the process', () => {
+  it('on SIGTERM lets the request under way end, empties the write-ahead log and exits with 0', async () => {
+    const folder = newFolder();
+    const { child, exit, said } = spawnServer(folder);
+    const { status, finish } = await halfARequest(await said(/"address":"([^"]+)"/));
+    child.kill('SIGTERM');
+    await said(/"stopping"/);
+    finish();
+    expect(await status).toBe(201);
+    expect(await exit).toBe(0);
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key']);
+    expect(mode(databaseFile(folder))).toBe('600');
+    const database = new Database(databaseFile(folder), { readonly: true });
+    expect(database.prepare('SELECT email FROM person').all()).toEqual([{ email: 'alva@example.com' }]);
+    database.close();
+  });
+
+  it('on a second signal does not wait for the request under way, and exits with 1', async () => {
+    const { child, exit, said } = spawnServer(newFolder());
+    const { status } = await halfARequest(await said(/"address":"([^"]+)"/));
+    child.kill('SIGTERM');
+    await said(/"stopping"/);
+    child.kill('SIGTERM');
+    expect(await exit).toBe(1);
+    await expect(status).rejects.toThrow();
+  });
+
+  it('with a setting that cannot be says which, and exits with 1', async () => {
+    const { exit, output } = spawnServer(newFolder(), { PORT: 'eighty' });
+    expect(await exit).toBe(1);
+    expect(output()).toContain('PORT');
+  });
+});
