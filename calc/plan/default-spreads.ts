@@ -5,7 +5,7 @@
  * resistance give the 5 to 95 % band the tests compare with); the split by source is common practice: what was
  * measured here is trusted twice as far as a label, a guess half as far as a label.
  */
-import type { ModuleParameters, NumberSource, ResistanceKind, Spreads } from '../plan-types';
+import type { ModuleParameters, NumberSource, ResistanceKind } from '../plan-types';
 
 export const CAPACITY_RELATIVE_SD: Record<NumberSource, number> = { measured: 0.03, label: 0.06, guessed: 0.12 };
 

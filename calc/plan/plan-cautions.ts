@@ -1,5 +1,4 @@
-import { isBeyondCurve } from '../curve/ocv';
-import { slopeAtSoc } from '../curve/ocv';
+import { isBeyondCurve, slopeAtSoc } from '../curve/ocv';
 import { CHEMISTRIES } from '../parameters/chemistries';
 import type { Caution } from '../plan-types';
 import type { PlanModel } from './plan-model';

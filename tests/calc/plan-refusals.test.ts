@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { planCharge, type PlanInput, type Refusal } from '@/calc/index';
-import { channel, lmoModule, lmoSpare, planInput, target } from './plan-fixtures';
+import { channel, lmoSpare, planInput, target } from './plan-fixtures';
 
 const plain = (text: string): string => text.replaceAll('\u00a0', ' ');
 const refusals = (over: Partial<PlanInput>): Refusal[] => {

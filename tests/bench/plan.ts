@@ -1,0 +1,74 @@
+import { chargeThroughTerminals, planCharge, reckonCharge, type PlanInput } from '@/calc/index';
+import { fileURLToPath } from 'node:url';
+import { reckonInput } from '../calc/live-fixtures';
+import { lmoModule, lmoSpare, planInput, sixChannels } from '../calc/plan-fixtures';
+import { LMO_BLEND } from '../calc/reference/curves';
+import { lmoGroup, stepOf } from '../calc/reference/modules';
+
+const plans: { name: string; input: PlanInput }[] = [
+  { name: '2 groups', input: planInput({ channels: sixChannels }) },
+  {
+    name: '12 groups, one low',
+    input: planInput({
+      channels: sixChannels,
+      module: { ...lmoModule, groupsInSeries: 12 },
+      spare: { ...lmoSpare, groupVolts: [3.71, ...Array.from({ length: 11 }, (_, at) => 3.75 + 0.0002 * at)] },
+    }),
+  },
+];
+
+/**
+ * Times a whole plan, all ways, finishes and six channels with bands of 64 samples, against the same plan's nominal run alone
+ * (one sample), and against one single step of the core through a taper; then one reckoning of a running charge.
+ *
+ * @returns lines to print
+ */
+export function benchPlan(): Promise<string[]> {
+  const step = stepOf(
+    [lmoGroup(3.75), lmoGroup(3.75)],
+    LMO_BLEND,
+    { maxAmps: 10, setVolts: 7.84 },
+    { cutoffAmps: 0.66 },
+  );
+  const stepMs = fastest(() => chargeThroughTerminals(step), 200, 20);
+  return Promise.resolve([...plans.map((plan) => benchOne(plan, stepMs)), benchReckoning()]);
+}
+
+function benchOne({ name, input }: (typeof plans)[number], stepMs: number): string {
+  const { options } = planCharge(input);
+  const whole = fastest(() => planCharge(input), 3, 10);
+  const nominal = fastest(() => planCharge({ ...input, samples: 1 }), 3, 10);
+  return (
+    `a plan, ${name}, six channels: ${whole.toFixed(1)} ms for ${options.length} ways with bands of 64 samples; ` +
+    `${(whole / nominal).toFixed(2)} times its nominal run alone (${nominal.toFixed(1)} ms), ` +
+    `${(whole / stepMs).toFixed(0)} times one on-the-mark step of the core (${(1000 * stepMs).toFixed(0)} µs)`
+  );
+}
+
+function benchReckoning(): string {
+  const input = planInput({ channels: sixChannels });
+  const option = planCharge(input).options.find((one) => one.id === 'terminals/on-the-mark/id-B1')!;
+  const readings = Array.from({ length: 20 }, (_, at) => ({
+    s: 120 * (at + 1),
+    terminalVolts: 7.6 + 0.01 * at,
+    amps: 20,
+    celsius: 25,
+    groupVolts: null,
+  }));
+  const live = reckonInput(input, option, { nowS: 2500, readings });
+  const ms = fastest(() => reckonCharge(live), 10, 10);
+  return `a reckoning of a running charge with 20 readings: ${ms.toFixed(2)} ms`;
+}
+
+/** Milliseconds of one run: the least mean of several batches, which other work on the machine disturbs least. */
+function fastest(run: () => unknown, runs: number, batches: number): number {
+  let best = Infinity;
+  for (let batch = 0; batch < batches; batch++) {
+    const start = performance.now();
+    for (let at = 0; at < runs; at++) run();
+    best = Math.min(best, (performance.now() - start) / runs);
+  }
+  return best;
+}
+
+if (process.argv[1] === fileURLToPath(import.meta.url)) for (const line of await benchPlan()) console.log(line);
