@@ -75,6 +75,15 @@ describe('solutions on paper', () => {
     expect(left).toBeCloseTo(0.004, 9);
   });
 
+  it('over-voltages of opposite signs do not hide each other: both must settle', () => {
+    const groups = [cell(3.5, { polarisationVolts: 0.02 }), cell(3.5, { polarisationVolts: -0.02 })];
+    const result = chargeThroughTerminals(
+      stepOf(groups, line, { maxAmps: 4 }, { relaxedVolts: 7 }, { settledVolts: 0.004 }),
+    );
+    expect(result.stopAtS).toBe(0);
+    expect(result.settleS).toBeCloseTo(100 * Math.log(10), 9);
+  });
+
   // P = V·I with V = E + I·R.
   it('a power limit of 100 W at 3.5 V and 10 mΩ lets 26.6 A through at first, and 100 W all the way', () => {
     const result = chargeThroughTerminals(stepOf([cell(3.5)], line, { maxWatts: 100 }, { relaxedVolts: 3.8 }), {

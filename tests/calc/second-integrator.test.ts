@@ -57,18 +57,31 @@ const cases: { name: string; outcome: string; limitingGroup: number | null; inpu
     }),
   },
   {
-    name: 'a held group whose over-voltage starts away from its neighbours’ and settles faster',
+    name: 'a held group whose over-voltage starts away from that of its neighbours',
     outcome: 'time-cap',
     limitingGroup: 1,
     input: step({
       groups: [
         group(66, 3.86, { polarisationVolts: -0.004 }),
-        group(60, 3.87, { polarisationVolts: 0.011, polarisationTimeConstantS: 120 }),
-        group(66, 3.85),
+        group(60, 3.895, { polarisationVolts: 0.02 }),
+        group(66, 3.85, { polarisationTimeConstantS: 120 }),
       ],
       curve: LMO_BLEND,
-      source: { ...free, maxAmps: 20, heldGroupVolts: 3.925 },
-      stop: { ...open, maxSeconds: 4000 },
+      source: { ...free, maxAmps: 20, heldGroupVolts: 3.93 },
+      stop: { ...open, maxSeconds: 400 },
+    }),
+  },
+  {
+    name: 'NiMH down, where the share that stays does not count',
+    outcome: 'target',
+    limitingGroup: null,
+    input: step({
+      groups: [1.29, 1.288].map((volts) => group(6.5, volts, { polarisationTimeConstantS: 60 })),
+      curve: NIMH,
+      coulombicEfficiency: 0.9,
+      direction: 'discharge',
+      source: { ...free, maxAmps: 2, setVolts: 2.5 },
+      stop: { ...open, relaxedVolts: 2.52 },
     }),
   },
   {
