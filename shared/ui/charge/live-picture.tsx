@@ -1,0 +1,53 @@
+import { useState } from 'react';
+import { View } from 'react-native';
+import type { ChargeDto } from '@/shared/contract/charge';
+import { ChargePicture } from '../charts/charge-picture';
+import { ChartFrame } from '../charts/chart-frame';
+import { PictureTable } from '../charts/picture-table';
+import { clock } from '../format/clock';
+import { useFormats } from '../format/formats';
+import { volts } from '../format/quantities';
+import { clockTicks } from '../wait-ribbon/ticks';
+import { cardRibbon } from './card-drawings';
+
+/** Volts and amps of the plan with the readings on it. Loaded after the screen, since it brings the charts. */
+export default function LivePicture({ charge, now }: { charge: ChargeDto; now: number }) {
+  const { zone, marks } = useFormats();
+  const [width, setWidth] = useState(0);
+  const zero = Date.parse(charge.startedAt ?? charge.clipOnAt);
+  const { trace } = charge.option;
+  const ribbon = cardRibbon(charge, now, zero);
+  const toS = Math.max(trace.at(-1)?.s ?? 0, ribbon.toS);
+  const count = Math.max(1, charge.groups.length);
+  const readings = charge.readings
+    .filter((reading) => reading.replacedBy === null)
+    .map((reading) => ({
+      s: (Date.parse(reading.at) - zero) / 1000,
+      volts: reading.terminalVolts === null || charge.way !== 'terminals' ? null : reading.terminalVolts / count,
+      amps: reading.amps === null ? null : Math.abs(reading.amps),
+      odd: false,
+    }));
+  return (
+    <View onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))}>
+      {width === 0 || trace.length < 2 ? null : (
+        <ChartFrame
+          heading="The picture"
+          note="Volts per group: line at the clips, dashes the rest voltage, mark the target; dots are readings. Below, amps, and the comb of the finish."
+          picture={
+            <ChargePicture
+              width={width}
+              trace={trace}
+              segments={ribbon.segments}
+              band={ribbon.band ?? charge.option.totalS}
+              targetVolts={charge.targetVolts}
+              readings={readings}
+              ticks={clockTicks({ zeroInstant: zero, fromS: 0, toS, width, zone, marks })}
+              twin={`By the plan the groups reach ${volts(charge.targetVolts, marks)} at rest; current flows until ${clock(zero + (ribbon.segments.findLast((segment) => segment.kind === 'cc' || segment.kind === 'taper')?.toS ?? 0) * 1000, zone, marks)}.`}
+            />
+          }
+          table={<PictureTable trace={trace} at={(s) => clock(zero + s * 1000, zone, marks)} />}
+        />
+      )}
+    </View>
+  );
+}
