@@ -34,18 +34,23 @@ async function overdue(day: BenchDay, now: number): Promise<void> {
   };
   const course = await courseOf(day.deps, wish, now);
   const start = now - 20 * MINUTE - course.lateMs;
-  const heldAt = start + 35 * MINUTE;
-  // Half an hour of current is left now.
-  const heldMs = now - start - course.endMs + 30 * MINUTE;
   const acts = actsOf(day, wish);
-  day.plan([
-    ...begin(acts, wish, start, now),
-    acts.read(start + 31 * MINUTE),
-    acts.hold(heldAt, 'The breaker of bench 2 has tripped'),
-    acts.resume(heldAt + heldMs),
-    acts.read(heldAt + heldMs + 4 * MINUTE),
-    acts.read(now - 24 * MINUTE),
-  ]);
+  day.plan(
+    [
+      ...begin(acts, wish, start, now),
+      acts.read(start + 31 * MINUTE),
+      acts.hold(start + 35 * MINUTE, 'The breaker of bench 2 has tripped'),
+      acts.read(now - 28 * MINUTE),
+    ],
+    {
+      charge: wish.repair,
+      // Switched on again so late that half an hour of current is left now.
+      react: ({ charge }, at) =>
+        charge.stage === 'held' && charge.currentEndAt !== null
+          ? acts.resume(now + 30 * MINUTE - (charge.currentEndAt - at))
+          : null,
+    },
+  );
 }
 
 async function checkDue(day: BenchDay, now: number): Promise<void> {

@@ -144,6 +144,6 @@ function checkedAt(dueAt: number, closing: DateTime, noise: Noise): number {
     const morning = closing.plus({ days: closing.weekday === 5 ? 3 : 1 }).set({ hour: 7, minute: 40 });
     return morning.toMillis() + Math.round(noise.between(0, 25)) * MINUTE;
   }
-  const minutes = noise.chance(0.06) ? noise.between(35, 90) : -4.5 * Math.log(1 - 0.98 * noise.share()) + 1;
+  const minutes = noise.chance(0.1) ? noise.between(12, 80) : noise.between(2.5, 7);
   return dueAt + Math.round(minutes * MINUTE);
 }

@@ -7,6 +7,7 @@ import path from 'node:path';
 import { randomBytes } from 'node:crypto';
 import type { Deps } from '../deps';
 import { entities } from '../entities/all';
+import { Meter } from '../entities/meter';
 import { Person } from '../entities/person';
 import { Workshop } from '../entities/workshop';
 import { countWorkshops } from '../repositories/workshops.repository';
@@ -135,7 +136,10 @@ async function setPasswords(deps: Deps, passwords: readonly Password[]): Promise
 /** Takes away what a seeding that failed has left. */
 async function removeDemo(deps: Deps): Promise<void> {
   await inTransaction(deps, async (manager) => {
-    for (const entity of [...entities].reverse())
+    // Chargers name meters, and all rows name people: these go last.
+    const last = [Meter, Person, Workshop];
+    const first = [...entities].reverse().filter((entity) => !last.some((one) => one === entity));
+    for (const entity of [...first, ...last])
       await manager.delete(entity, entity === Workshop ? { id: demoWorkshopId } : { workshopId: demoWorkshopId });
   });
 }

@@ -1,0 +1,261 @@
+import fs from 'node:fs';
+import os from 'node:os';
+import path from 'node:path';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { demoWorkshopId } from '@/server/demo/demo-workshop';
+import { demoHours, demoZone } from '@/server/demo/hours';
+import { passwordsFile, seedDemo } from '@/server/demo/seed';
+import { Charge } from '@/server/entities/charge';
+import { ChannelHold } from '@/server/entities/channel-hold';
+import { RestCheck } from '@/server/entities/rest-check';
+import { Workshop } from '@/server/entities/workshop';
+import type { AlertDto } from '@/shared/contract/alert';
+import type { BoardDto } from '@/shared/contract/board';
+import type { ChargeDto } from '@/shared/contract/charge';
+import type { ChargerDto, ModuleTypeDto } from '@/shared/contract/equipment';
+import type { PersonDto } from '@/shared/contract/people';
+import type { SpareDto } from '@/shared/contract/spare';
+import type { WaitsDto } from '@/shared/contract/waits';
+import type { Role } from '@/shared/contract/roles';
+import { cookiesOf } from '../../support/cookies';
+import { makeAgent, makeTestServer, testNow, type TestAgent, type TestServer } from '../../support/server';
+
+let server: TestServer;
+let dataDir: string;
+const agents = {} as Record<Role, TestAgent>;
+
+const seeded = async (now: number): Promise<TestServer> => {
+  const fresh = await makeTestServer({ empty: true, demo: true, now, config: { dataDir } });
+  await seedDemo(fresh.deps);
+  return fresh;
+};
+
+beforeAll(async () => {
+  dataDir = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-demo-'));
+  server = await seeded(testNow);
+  for (const role of ['technician', 'foreman', 'manager'] as const) {
+    const signedIn = await server.anyone.post('/api/demo/sign-in', { role }).expect(200);
+    const cookie = `bidewell_access=${cookiesOf(signedIn).bidewell_access!.value}`;
+    agents[role] = makeAgent(server.app, () => cookie);
+  }
+}, 120_000);
+afterAll(async () => {
+  await server.close();
+  fs.rmSync(dataDir, { recursive: true, force: true });
+});
+
+const read = async <Dto>(path: string, role: Role = 'manager'): Promise<Dto> =>
+  (await agents[role].get(path).expect(200)).body as Dto;
+
+describe('the open charges of the demo', () => {
+  it('stand in every stage, each with its repair', async () => {
+    const { charges } = await read<BoardDto>('/api/board');
+    const stages = Object.fromEntries(charges.map(({ title, stage }) => [title, stage]));
+    expect(stages).toEqual({
+      'R-2406': 'tapering',
+      'R-2408': 'ready',
+      'R-2409': 'check-due',
+      'R-2411': 'charging',
+      'R-2412': 'resting',
+      'R-2413': 'tapering',
+      'R-2415': 'discharging',
+      'R-2417': 'held',
+      'R-2418': 'queued',
+      'R-2423': 'planned',
+    });
+  });
+
+  it('have one that is overdue, and nobody has taken its alarm; no alert was told late', async () => {
+    const { charges } = await read<BoardDto>('/api/board');
+    expect(charges.filter(({ overdueSince }) => overdueSince !== null).map(({ title }) => title)).toEqual(['R-2406']);
+    const alerts = await read<AlertDto[]>('/api/alerts');
+    const open = alerts.filter(({ clearedAt }) => clearedAt === null);
+    expect(open.map(({ kind, takenBy }) => [kind, takenBy])).toEqual(
+      expect.arrayContaining([
+        ['overdue', null],
+        ['check-due', null],
+      ]),
+    );
+    for (const { seen, raisedAt } of alerts) {
+      expect(seen).not.toContain('late');
+      expect(Date.parse(raisedAt)).toBeLessThanOrEqual(testNow);
+    }
+  });
+
+  it('were read on the way, within 30 mV at the clips of what the plan expects, and one reading was corrected', async () => {
+    const { charges } = await read<BoardDto>('/api/board');
+    let corrected = 0;
+    for (const card of charges.filter(({ startedAt, title }) => startedAt !== null && title !== 'R-2406')) {
+      const charge = await read<ChargeDto>(`/api/charges/${card.id}`);
+      const valid = charge.readings.filter(({ replacedBy }) => replacedBy === null);
+      expect(valid.length, card.title).toBeGreaterThan(0);
+      corrected += charge.readings.length - valid.length;
+      if (charge.expected)
+        expect(Math.abs(charge.expected.terminalVolts - valid.at(-1)!.terminalVolts!), card.title).toBeLessThan(0.03);
+      expect(charge.checks.every(({ answer }) => answer === 'yes')).toBe(true);
+    }
+    expect(corrected).toBe(1);
+  });
+
+  it('leave the queued one with checks to answer and a way to start it', async () => {
+    const { charges } = await read<BoardDto>('/api/board');
+    const queued = charges.find(({ stage }) => stage === 'queued')!;
+    const charge = await read<ChargeDto>(`/api/charges/${queued.id}`);
+    expect(charge.startBlockedBy).toContain('still to come');
+    expect(charge.channelNames).toEqual(['B1']);
+  });
+
+  it('go on by the clock: an hour later the resting one asks for its check', async () => {
+    const { charges } = await read<BoardDto>('/api/board');
+    const due = charges.find(({ title }) => title === 'R-2412')!.checkDueAt!;
+    expect(Date.parse(due) - testNow).toBeGreaterThan(20 * 60_000);
+    expect(Date.parse(due) - testNow).toBeLessThan(60 * 60_000);
+  });
+});
+
+describe('the workshop of the demo', () => {
+  it('has people of each role under example.com, and an open invitation', async () => {
+    const people = await read<PersonDto[]>('/api/people');
+    expect(people.map(({ role }) => role).sort()).toEqual([
+      'foreman',
+      'manager',
+      'technician',
+      'technician',
+      'technician',
+      'technician',
+    ]);
+    for (const { email } of people) expect(email).toMatch(/@harbourlane\.example\.com$/);
+    expect(await read<unknown[]>('/api/invitations')).toHaveLength(1);
+  });
+
+  it('has six chargers, four module types over three chemistries and 30 spares, two of them in quarantine', async () => {
+    const chargers = await read<ChargerDto[]>('/api/chargers');
+    expect(chargers.flatMap(({ channels }) => channels.map(({ name }) => name)).sort()).toEqual([
+      'A1',
+      'A2',
+      'B1',
+      'B2',
+      'C1',
+      'C2',
+    ]);
+    expect(chargers).toHaveLength(6);
+    const types = await read<ModuleTypeDto[]>('/api/module-types');
+    expect(new Set(types.map(({ chemistry }) => chemistry)).size).toBe(3);
+    expect(types).toHaveLength(4);
+    const spares = await read<SpareDto[]>('/api/spares');
+    const where = (place: string) => spares.filter((spare) => spare.where === place).length;
+    expect([spares.length, where('charge'), where('quarantine')]).toEqual([30, 10, 2]);
+    expect(types.reduce((sum, { spareCount }) => sum + spareCount, 0)).toBeGreaterThan(200);
+  });
+
+  it('keeps a random password each in a file of the data folder that only its owner reads, and one signs in', async () => {
+    const file = passwordsFile(dataDir);
+    expect(fs.statSync(file).mode & 0o777).toBe(0o600);
+    const lines = fs.readFileSync(file, 'utf8').match(/^\S+@\S+ {2}\S+/gm)!;
+    expect(new Set(lines.map((line) => line.split(/\s+/)[1])).size).toBe(6);
+    const [email, password] = lines[0]!.split(/\s+/);
+    await server.anyone.post('/api/session', { email, password }).expect(200);
+    await server.anyone.post('/api/session', { email, password: `${password}x` }).expect(401);
+  });
+});
+
+describe('the past of the demo', () => {
+  it('fills eight weeks with 200 to 260 charges on every type and charger, most of them inside their band', async () => {
+    const waits = await read<WaitsDto>('/api/waits', 'foreman');
+    expect(waits.charges).toBeGreaterThan(200);
+    expect(waits.charges).toBeLessThan(260);
+    expect(waits.weeks.slice(0, 8).every(({ charges }) => charges > 15)).toBe(true);
+    expect(waits.byModuleType).toHaveLength(4);
+    expect(waits.byCharger).toHaveLength(6);
+    expect(waits.insideBand).toBeGreaterThan(0.65);
+    expect(waits.insideBand).toBeLessThan(0.95);
+    expect(waits.medianS! / 3600).toBeGreaterThan(1.5);
+    expect(waits.medianS! / 3600).toBeLessThan(5);
+    expect(waits.stages.map(({ stage }) => stage)).toEqual(['queue', 'charging', 'tapering', 'resting', 'check-due']);
+  });
+
+  it('never has two charges on one channel at once', async () => {
+    const holds = await server.deps.dataSource.manager.find(ChannelHold, {
+      order: { channelId: 'ASC', fromAt: 'ASC' },
+    });
+    const taken = holds.filter(({ state }) => state !== 'reserved');
+    expect(taken.length).toBeGreaterThan(200);
+    taken.forEach((hold, place) => {
+      const before = taken[place - 1];
+      if (before?.channelId === hold.channelId) expect(hold.fromAt!).toBeGreaterThanOrEqual(before.toAt!);
+    });
+  });
+
+  it('was fitted where its groups were within the tolerance, and topped up or begun again where not', async () => {
+    const { manager } = server.deps.dataSource;
+    const checks = new Map((await manager.find(RestCheck)).map((check) => [check.chargeId, check]));
+    const charges = await manager.find(Charge, { select: { id: true, stage: true, topUpOf: true } });
+    const topped = new Set(charges.map(({ topUpOf }) => topUpOf));
+    for (const { id, stage } of charges) {
+      if (stage === 'fitted') expect(checks.get(id)?.verdict.within).toBe(true);
+      if (stage === 'shelved') expect([checks.get(id)?.verdict.within, topped.has(id)]).toEqual([false, true]);
+    }
+    for (const stage of ['fitted', 'shelved', 'stopped']) expect(charges.some((one) => one.stage === stage)).toBe(true);
+  });
+
+  it('shows a closed charge with its checks, readings, look-ins and log', async () => {
+    const { items } = await closedPage();
+    const charge = await read<ChargeDto>(`/api/charges/${items.find(({ stage }) => stage === 'fitted')!.id}`);
+    expect(charge.checks.every(({ answer }) => answer === 'yes')).toBe(true);
+    expect(charge.readings.length).toBeGreaterThan(0);
+    expect(charge.restChecks).toHaveLength(1);
+    expect(charge.events.map(({ kind }) => kind)).toEqual(
+      expect.arrayContaining(['planned', 'started', 'resting', 'check-due', 'ready', 'fitted']),
+    );
+    expect(charge.deliveredAh).toBeGreaterThan(0.5);
+    expect(charge.deliveredAh / charge.plannedAh).toBeCloseTo(1, 0);
+  });
+
+  async function closedPage(): Promise<{ items: { id: string; stage: string }[] }> {
+    const body = await read<unknown>('/api/charges?closed=1');
+    return Array.isArray(body) ? { items: body as { id: string; stage: string }[] } : (body as never);
+  }
+});
+
+describe('seeding', () => {
+  it('again changes nothing', async () => {
+    const count = await server.deps.dataSource.manager.count(Charge);
+    const told = server.hub.told.length;
+    await seedDemo(server.deps);
+    expect(await server.deps.dataSource.manager.count(Charge)).toBe(count);
+    expect(server.hub.told).toHaveLength(told);
+  });
+
+  it('leaves a database alone that has a workshop', async () => {
+    const used = await makeTestServer({ demo: true, config: { dataDir } });
+    await seedDemo(used.deps);
+    expect(await used.deps.dataSource.manager.countBy(Workshop, { id: demoWorkshopId })).toBe(0);
+    await used.close();
+  });
+
+  it('on a Sunday night makes the same stages, and begins anew where it was cut off', async () => {
+    const sunday = Date.parse('2026-03-29T01:30:00Z');
+    const fresh = await seeded(sunday);
+    const { manager } = fresh.deps.dataSource;
+    const stages = async () =>
+      (await manager.find(Charge, { select: { id: true, stage: true } })).map(({ stage }) => stage).sort();
+    const first = await stages();
+    expect(new Set(first).size).toBe(12);
+    await manager.update(Workshop, { id: demoWorkshopId }, { rev: 0 });
+    await seedDemo(fresh.deps);
+    expect(await stages()).toEqual(first);
+    expect(await manager.count(Workshop)).toBe(1);
+    await fresh.close();
+  }, 180_000);
+
+  it('puts a machine without a place beside the harbour, and opens its day around the seeding', () => {
+    expect(demoZone('UTC')).toBe('Europe/Amsterdam');
+    expect(demoZone('America/Toronto')).toBe('America/Toronto');
+    const night = Date.parse('2026-06-10T01:00:00Z');
+    expect(demoHours(night, 'Europe/Amsterdam')[2]).toEqual({ from: '00:00', to: '18:00' });
+    expect(demoHours(Date.parse('2026-06-07T20:00:00Z'), 'Europe/Amsterdam')[6]).toEqual({
+      from: '16:00',
+      to: '23:59',
+    });
+  });
+});
