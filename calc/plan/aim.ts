@@ -1,11 +1,11 @@
 import type { Direction } from '../types';
 import { voltsAtSoc } from '../curve/ocv';
 import type { PlanModel } from './plan-model';
-import { ampHoursToFirst, ampHoursToVolts, stringCharge, stringVolts, type StringCharge } from './string-charge';
+import { ampHoursToFirst, stringCharge, stringVolts, type StringCharge } from './string-charge';
 
 /** Where a current through all groups is to end. */
 export interface Aim {
-  /** 'sum': where the summed rest voltage is `sumVolts`; 'first': where the first group is at the target. */
+  /** 'sum': where the summed rest voltage is `sumVolts`, the middle; 'first': where the first group is at the target. */
   kind: 'sum' | 'first';
   /** Summed rest voltage there, V. */
   sumVolts: number;
@@ -24,22 +24,14 @@ export interface Aim {
 /**
  * Chooses where the current through the terminals ends.
  *
- * The sum of the targets where every group is then inside the tolerance; else the middle between the highest and the lowest
- * group, where that has all of them inside; else as far as the first group goes, and the others are left for the trim.
+ * In the middle, where the highest group is as far over the target as the lowest is under it, if all are inside the tolerance
+ * then: no other end has a smaller worst deviation. Else as far as the first group goes, and the others are left for the trim.
  */
 export function chooseAim(model: PlanModel, direction: Direction): Aim {
   const string = moduleString(model, direction);
-  const { targetVolts, toleranceVolts } = model;
-  const count = model.groups.length;
-  const sum = aimAt(model, string, 'sum', ampHoursToVolts(string, targetVolts * count), direction);
-  if (sum.outside.length === 0) return sum;
   const middle = aimAt(model, string, 'sum', middleAmpHours(model, string), direction);
   if (middle.outside.length === 0) return middle;
-  const first = aimAt(model, string, 'first', Math.max(0, ampHoursToFirst(string, model.targetSoc)), direction);
-  return {
-    ...first,
-    outside: first.deviations.flatMap((off, group) => (Math.abs(off) > toleranceVolts ? [group] : [])),
-  };
+  return aimAt(model, string, 'first', Math.max(0, ampHoursToFirst(string, model.targetSoc)), direction);
 }
 
 /** The module's groups as a string in one direction. */
@@ -79,7 +71,7 @@ function middleAmpHours(model: PlanModel, string: StringCharge): number {
   let low = Math.max(0, Math.min(...needs));
   let high = Math.max(0, ...needs);
   const sign = Math.sign(string.alike[0]!.socPerAmpHour);
-  for (let pass = 0; pass < 40; pass += 1) {
+  for (let pass = 0; pass < 60; pass += 1) {
     const middle = (low + high) / 2;
     const volts = string.alike.map(({ soc, socPerAmpHour: step }) => voltsAtSoc(string.curve, soc + step * middle));
     const centre = (Math.max(...volts) + Math.min(...volts)) / 2;

@@ -12,6 +12,11 @@ import { ampsText, groupText, limitText, millivoltsText } from './words';
 
 /** An end current below this cannot be read off any charger, A. */
 const LEAST_END_AMPS = 1e-4;
+/**
+ * Under current a group may stand this far past its limit, V: at a set voltage of the limit itself unequal groups share it unevenly.
+ * A tenth of the ±50 mV that guides allow a 4.20 V cell.
+ */
+const LIMIT_MARGIN_VOLTS = 0.005;
 
 export interface SeriesStepInput {
   model: PlanModel;
@@ -69,7 +74,10 @@ export function seriesStep(input: SeriesStepInput): DraftStep | NotPossible {
         toleranceVolts: onTheMark ? input.markVolts : 0,
         groupRelaxedVolts: byGroup ? model.targetVolts : null,
         cutoffAmps: onTheMark && channel.minAmps > 0 ? channel.minAmps : null,
-        groupVolts: direction === 'charge' ? module.chargeLimitVolts : module.dischargeLimitVolts,
+        groupVolts:
+          direction === 'charge'
+            ? module.chargeLimitVolts + LIMIT_MARGIN_VOLTS
+            : module.dischargeLimitVolts - LIMIT_MARGIN_VOLTS,
       },
       settledVolts: model.settledVolts(groups.length),
     },

@@ -86,7 +86,7 @@ function neverLater(first: PlanInput, second: PlanInput, pick: (option: PlanOpti
   const others = good(second);
   for (const [id, option] of good(first)) {
     const other = others.get(id);
-    if (!other || !pick(option)) continue;
+    if (!other || !pick(option) || !pick(other)) continue;
     expect(other.currentEndS, `${id}: ${other.currentEndS} s after ${option.currentEndS} s`).toBeLessThanOrEqual(
       option.currentEndS * 1.005 + 5,
     );
@@ -162,6 +162,54 @@ describe('whatever the module', () => {
           expect(forgotten.outcome).toBe('cutoff');
           for (const group of forgotten.groups)
             expect(voltsAtSoc(known.curve, group.soc)).toBeLessThanOrEqual(known.chargeLimitVolts + 1e-6);
+        }
+      }),
+      { numRuns: 80 },
+    );
+  });
+
+  it('a load forgotten at the planned set voltage leaves every group at or over its limit, over 80 modules', () => {
+    fc.assert(
+      fc.property(draws, (draw) => {
+        const known = chemistryParameters(draw.chemistry);
+        const down: Draw = {
+          ...draw,
+          from: draw.from.map((volts) => volts + draw.to - Math.min(...draw.from)),
+          to: Math.min(...draw.from),
+        };
+        const input = inputOf(down);
+        const plan = planCharge({
+          ...input,
+          module: { ...input.module, maxDischargeAmps: 1000 },
+          channels: [channel('D1', { canDischarge: true, dischargeAmps: draw.amps, displayStepVolts: 0 })],
+        });
+        const found = plan.options.filter((option) => option.way === 'terminals' && option.direction === 'discharge');
+        for (const { steps } of found) {
+          const bulk = steps[0]!;
+          const forgotten = chargeThroughTerminals({
+            groups: down.from.map((restVolts, at) => ({
+              capacityAh: draw.capacityAh[at]!,
+              ...splitLongResistance(draw.ohmAh / draw.capacityAh[0]!),
+              polarisationTimeConstantS: known.polarisationTimeConstantS,
+              restVolts,
+            })),
+            curve: known.curve,
+            linkResistanceOhm: 0,
+            coulombicEfficiency: 1,
+            direction: 'discharge',
+            source: {
+              maxAmps: bulk.setAmps,
+              setVolts: bulk.setVolts,
+              maxWatts: null,
+              leadResistanceOhm: 0,
+              heldGroupVolts: null,
+              loadOhm: null,
+            },
+            stop: { relaxedVolts: null, toleranceVolts: 0, cutoffAmps: draw.amps * 1e-4, groupVolts: null },
+            settledVolts: 1e-4,
+          });
+          for (const group of forgotten.groups)
+            expect(voltsAtSoc(known.curve, group.soc)).toBeGreaterThanOrEqual(known.dischargeLimitVolts - 1e-6);
         }
       }),
       { numRuns: 80 },

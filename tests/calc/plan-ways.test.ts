@@ -220,6 +220,26 @@ describe('the ways of a plan', () => {
     );
   });
 
+  it('takes a target just under the limit by the taper at the limit itself, and rules out amps that would lift a group past it', () => {
+    const high = { ...target, volts: 4.17 };
+    const tapers = planCharge(planInput({ target: high, channels: [channel('B1', { maxAmps: 30 })] }));
+    const option = byId(tapers, 'terminals/over-and-settle/id-B1')!;
+    expect(option.setVolts).toBeCloseTo(8.4, 6);
+    expect(option.segments.map((one) => one.kind)).toContain('taper');
+    const load = channel('D1', { canDischarge: true, dischargeAmps: 60, adjustableVolts: false });
+    const low = planCharge(
+      planInput({
+        target: { ...target, volts: 2.75 },
+        spare: { ...lmoSpare, groupVolts: [3.3, 3.3] },
+        channels: [load],
+      }),
+    );
+    // 60 A over 2 mΩ are 120 mV: 2.63 V under current.
+    expect(reasonOf(low, 'terminals', 'over-and-settle', 'D1')).toBe(
+      'At 60 A G1 would be at its 2.70 V before the target. Take fewer amps.',
+    );
+  });
+
   it('leaves out what takes days where something is quicker, and keeps it where nothing is', () => {
     const slow = channel('Z1', { maxAmps: 0.3 });
     const both = planCharge(planInput({ channels: [channel('A1'), slow] }));
