@@ -16,7 +16,7 @@ const fileIn = (folder: string, extension: string) => {
 
 async function complaints(folder: string, code: string, extension = '.ts'): Promise<string> {
   const [result] = await eslint.lintText(code, { filePath: fileIn(folder, extension) });
-  return result.messages
+  return (result?.messages ?? [])
     .filter((message) => message.severity === 2)
     .map((message) => message.message)
     .join('\n');
