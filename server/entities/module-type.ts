@@ -1,6 +1,5 @@
 import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
-import type { ChemistryId } from '@/calc/plan-types';
-import type { ResistanceKind } from '@/calc/plan-types';
+import type { ChemistryId, ResistanceKind } from '@/calc/plan-types';
 import {
   idColumn,
   instantColumn,

@@ -1,0 +1,201 @@
+/** Two workshops with one of everything, made over the API as their people do it: for tests that walk all routes. */
+import { Alert } from '@/server/entities/alert';
+import { makeSleeper } from '@/server/live/sleeper-loop';
+import type { ChargeDto } from '@/shared/contract/charge';
+import type { ChargerDto, MeterDto, ModuleTypeDto, ResistorDto } from '@/shared/contract/equipment';
+import type { OneUseLinkDto } from '@/shared/contract/people';
+import type { PlanDto } from '@/shared/contract/plan';
+import type { SpareDto } from '@/shared/contract/spare';
+import type { WallCodeDto, WallDto } from '@/shared/contract/wall';
+import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from './forms';
+import { created } from './stocked';
+import type { TestAgent, TestServer, TestWorkshop } from './server';
+
+export interface Furnished {
+  name: string;
+  workshop: TestWorkshop;
+  typeId: string;
+  /** A type that nothing uses. */
+  spareTypeId: string;
+  meterId: string;
+  resistorId: string;
+  chargerId: string;
+  channelId: string;
+  /** A spare in a charge that runs, with a reading, for the technician. */
+  chargedSpareId: string;
+  chargeId: string;
+  chargeRev: number;
+  readingId: string;
+  /** A charge that has rested and waits for its check. */
+  restedId: string;
+  restedRev: number;
+  /** A spare on the shelf, and a plan's option for it. */
+  spareId: string;
+  optionId: string;
+  alertId: string;
+  invitationId: string;
+  invitationToken: string;
+  wallId: string;
+  wallCookie: string;
+  /** A screen that waits for somebody's answer. It belongs to nobody yet. */
+  waiting: WallCodeDto;
+}
+
+/** Every id of a workshop's rows that a request could name. */
+export const idsOf = (furnished: Furnished): string[] => [
+  furnished.workshop.id,
+  ...Object.values(furnished.workshop.people).flatMap(({ id, sessionId }) => [id, sessionId]),
+  furnished.typeId,
+  furnished.spareTypeId,
+  furnished.meterId,
+  furnished.resistorId,
+  furnished.chargerId,
+  furnished.channelId,
+  furnished.chargedSpareId,
+  furnished.chargeId,
+  furnished.readingId,
+  furnished.restedId,
+  furnished.spareId,
+  furnished.alertId,
+  furnished.invitationId,
+  furnished.wallId,
+];
+
+const bodyOf = async <Dto>(test: ReturnType<TestAgent['get']>, status = 200): Promise<Dto> => {
+  const answer = await test;
+  if (answer.status !== status)
+    throw new Error(`${answer.status} instead of ${status}: ${JSON.stringify(answer.body)}`);
+  return answer.body as Dto;
+};
+
+let keys = 0;
+export const newKey = (): string => `furnishing-key-${(keys += 1)}`;
+
+/** Plans, answers the checks and clips on. */
+async function startCharge(server: TestServer, technician: TestAgent, spareId: string, channelId: string) {
+  const wish = { ...planForm(spareId), readyBy: null, clipOnAt: null };
+  const { plan } = await bodyOf<PlanDto>(technician.post('/api/plans', wish));
+  const optionId = plan.options.find(({ channelIds }) => channelIds.includes(channelId))?.id ?? '';
+  const kept = technician.post('/api/charges', { ...wish, optionId }).set('Idempotency-Key', newKey());
+  let charge = await bodyOf<ChargeDto>(kept, 201);
+  for (const { code, by } of charge.checks)
+    if (by === 'person')
+      charge = await bodyOf<ChargeDto>(technician.post(`/api/charges/${charge.id}/checks`, { code, answer: 'yes' }));
+  server.clock.advance(1000);
+  const start = technician
+    .post(`/api/charges/${charge.id}/start`)
+    .set({ 'If-Match': `"${charge.rev}"`, 'Idempotency-Key': newKey() });
+  return bodyOf<ChargeDto>(start);
+}
+
+async function addWall(server: TestServer, foreman: TestAgent, name: string) {
+  const asked = await bodyOf<WallCodeDto>(server.anyone.post('/api/wall/codes'), 201);
+  const { userCode, deviceCode } = asked;
+  const form = { userCode, name: `Wall of ${name}`, diagonalInches: '55', distanceMetres: '7' };
+  const { id } = await created<WallDto>(foreman, '/api/wall/approvals', form);
+  const collected = await server.anyone.post('/api/wall/token', { deviceCode });
+  const [cookie = ''] = (collected.headers['set-cookie'] ?? []) as unknown as string[];
+  return { wallId: id, wallCookie: cookie.split(';')[0] ?? '' };
+}
+
+/** Stock, equipment, and a charge that is clipped on. Texts all hold '<name>'s', so that a leak shows. */
+async function begin(server: TestServer, name: 'own' | 'other') {
+  const workshop = server[name];
+  const technician = server.agentFor('technician', workshop);
+  const manager = server.agentFor('manager', workshop);
+  const named = (what: string) => ({ name: `${name}’s ${what}` });
+  const meter = await created<MeterDto>(manager, '/api/meters', {
+    ...named('meter'),
+    offsetMillivolts: '0',
+    checkedAt: '2026-05-12T08:00:00Z',
+  });
+  const type = await created<ModuleTypeDto>(manager, '/api/module-types', moduleTypeForm(named('type')));
+  const unused = await created<ModuleTypeDto>(manager, '/api/module-types', moduleTypeForm(named('unused type')));
+  const resistor = await created<ResistorDto>(manager, '/api/resistors', {
+    ...named('resistor'),
+    ohm: '0,1',
+    maxWatts: '50',
+  });
+  const channels = ['1', '2'].map((number) => channelForm({ name: `${name}’s ${number}` }));
+  const charger = await created<ChargerDto>(
+    manager,
+    '/api/chargers',
+    chargerForm({ ...named('charger'), place: `${name}’s bench`, meterId: meter.id, channels }),
+  );
+  const reading = readingForm({ meterId: meter.id });
+  const addSpare = (label: string) =>
+    created<SpareDto>(technician, '/api/spares', { ...spareForm(type.id, { label: `${name}’s ${label}` }), reading });
+  const rested = await addSpare('S-0');
+  const charged = await addSpare('S-1');
+  const spare = await addSpare('S-2');
+  const [first, second] = charger.channels.map(({ id }) => id);
+  const charge = await startCharge(server, technician, rested.id, first ?? '');
+  return {
+    ...{ name, workshop, technician, manager, channelId: second ?? '' },
+    ...{ typeId: type.id, spareTypeId: unused.id, meterId: meter.id, resistorId: resistor.id, chargerId: charger.id },
+    ...{ chargedSpareId: charged.id, spareId: spare.id, restedId: charge.id },
+  };
+}
+
+/** A second charge that runs, an alert, an invitation and a wall. */
+async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin>>): Promise<Furnished> {
+  const { name, workshop, technician, manager, ...ids } = begun;
+  const { rev, stage } = await bodyOf<ChargeDto>(technician.get(`/api/charges/${ids.restedId}`));
+  if (stage !== 'check-due') throw new Error(`The first charge is ${stage} and not due for its check.`);
+  const { id: chargeId } = await startCharge(server, technician, ids.chargedSpareId, ids.channelId);
+  server.clock.advance(60_000);
+  const logged = technician
+    .post(`/api/charges/${chargeId}/readings`, { terminalVolts: '7.6', amps: '20', celsius: '22' })
+    .set('Idempotency-Key', newKey());
+  const charge = await bodyOf<ChargeDto>(logged);
+  const { plan } = await bodyOf<PlanDto>(technician.post('/api/plans', planForm(ids.spareId)));
+  const alert: Alert = {
+    id: `${name}-alert`,
+    workshopId: workshop.id,
+    cause: `${name}-cause`,
+    kind: 'look-in-due',
+    level: 'amber',
+    chargeId,
+    personId: workshop.people.technician.id,
+    title: `${name}’s look-in`,
+    seen: 'Nothing yet.',
+    checkFirst: 'The clips.',
+    raisedAt: server.clock.now(),
+    lateByS: 0,
+    takenById: null,
+    takenAt: null,
+    clearedAt: null,
+  };
+  await server.deps.dataSource.manager.insert(Alert, alert);
+  const { url } = await bodyOf<OneUseLinkDto>(
+    manager.post('/api/invitations', { email: `nell@${name}.example.com`, role: 'technician' }),
+    201,
+  );
+  const [invitation] = await bodyOf<{ id: string }[]>(manager.get('/api/invitations'));
+  return {
+    name,
+    workshop,
+    ...ids,
+    restedRev: rev,
+    chargeId,
+    chargeRev: charge.rev,
+    readingId: charge.readings[0]?.id ?? '',
+    optionId: plan.options[0]?.id ?? '',
+    alertId: alert.id,
+    invitationId: invitation?.id ?? '',
+    invitationToken: new URL(url).searchParams.get('token') ?? '',
+    ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),
+    waiting: await bodyOf<WallCodeDto>(server.anyone.post('/api/wall/codes'), 201),
+  };
+}
+
+/** Furnishes both workshops of the test server alike. */
+export async function furnish(server: TestServer): Promise<{ own: Furnished; other: Furnished }> {
+  const sleeper = makeSleeper(server.deps);
+  const begun = [await begin(server, 'own'), await begin(server, 'other')] as const;
+  for (let hours = 0; hours < 8; hours += 1) {
+    server.clock.advance(3_600_000);
+    await sleeper.runDue();
+  }
+  return { own: await finish(server, begun[0]), other: await finish(server, begun[1]) };
+}
