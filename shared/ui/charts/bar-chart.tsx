@@ -14,7 +14,7 @@ export interface BarChartProps {
   bars: readonly WaitBar[];
   width: number;
   height?: number;
-  /** In one sentence what is seen: 'Lost hours fell from 76 to 49 in eight weeks.' */
+  /** In one sentence what is seen; empty where it stands beside it: 'Lost hours fell from 76 to 49 in eight weeks.' */
   twin: string;
 }
 
@@ -29,8 +29,7 @@ export function BarChart({ bars, width, height = 190, twin }: BarChartProps) {
       height={height + 26}
       viewBox={`0 0 ${width} ${height + 26}`}
       fill="none"
-      role="img"
-      aria-label={twin}
+      {...(twin === '' ? { 'aria-hidden': true } : { role: 'img', 'aria-label': twin })}
       style={styles.open}
     >
       <HatchPattern id={id} />

@@ -1,5 +1,7 @@
 import { scaleLinear } from 'd3-scale';
 import type { Band, Segment, TracePlanPoint } from '@/calc/plan-types';
+import { pointMarks, type LocaleMarks } from '../format/marks';
+import { fixed } from '../format/number';
 import type { ColorRole } from '../theme/tokens';
 import { combSlats } from '../wait-ribbon/comb';
 import { fromZero, lineDecimals, voltLines } from './axis-steps';
@@ -25,6 +27,8 @@ export interface PictureInput {
   width: number;
   voltsHeight: number;
   ampsHeight: number;
+  /** Decimal mark of the axis. */
+  marks?: LocaleMarks;
 }
 
 export interface GridLine {
@@ -82,6 +86,7 @@ const path = (points: readonly (readonly [number, number])[]) =>
 /** Volts above (clips solid, rest dashed, band as tint, target as notch line), amps below with the comb. */
 export function layoutPicture(input: PictureInput): PictureDrawing {
   const { trace, segments, band, targetVolts, readings = [], width, voltsHeight, ampsHeight } = input;
+  const { marks = pointMarks } = input;
   const spanS = Math.max(band.p90, segments.at(-1)?.toS ?? 0, ...readings.map((reading) => reading.s)) + 600;
   const x = scaleLinear().domain([0, spanS]).range([left, width]).clamp(true);
   const seen = readings.flatMap((reading) => (reading.volts == null ? [] : [reading.volts]));
@@ -124,8 +129,8 @@ export function layoutPicture(input: PictureInput): PictureDrawing {
     baseY,
     spanS,
     toX: (s) => n(x(s)),
-    voltLines: volts.map((line) => ({ y: n(y(line)), text: line.toFixed(Math.max(1, lineDecimals(volts))) })),
-    ampLines: amps.lines.map((line) => ({ y: n(yAmps(line)), text: line.toFixed(ampDecimals) })),
+    voltLines: volts.map((line) => ({ y: n(y(line)), text: fixed(line, Math.max(1, lineDecimals(volts)), marks) })),
+    ampLines: amps.lines.map((line) => ({ y: n(yAmps(line)), text: fixed(line, ampDecimals, marks) })),
     bandArea: `${path(area)}z`,
     clipLine: path(trace.map((point) => [x(point.s), y(point.clipVolts)] as const)),
     restLine: path(trace.map((point) => [x(point.s), y(point.restVolts)] as const)),

@@ -1,6 +1,7 @@
 import { useMemo } from 'react';
 import { StyleSheet } from 'react-native';
 import { Circle, G, Path, Svg, Text as SvgText } from 'react-native-svg';
+import { useFormats } from '../format/formats';
 import { stageGlyphs } from '../stage/stages';
 import { useHalo } from '../theme/surface';
 import { useTheme } from '../theme/theme';
@@ -24,7 +25,8 @@ const octagon = 'M7.6 1.5h8.8l6.1 6.1v8.8l-6.1 6.1H7.6l-6.1-6.1V7.6z';
 export function ChargePicture({ ticks, twin, voltsHeight = 150, ampsHeight = 66, ...input }: ChargePictureProps) {
   const { colors } = useTheme();
   const halo = useHalo();
-  const key = JSON.stringify({ ...input, voltsHeight, ampsHeight });
+  const { marks } = useFormats();
+  const key = JSON.stringify({ marks, ...input, voltsHeight, ampsHeight });
   const drawing = useMemo(() => layoutPicture(JSON.parse(key) as PictureInput), [key]);
   const { width, left, baseY, targetY } = drawing;
   const height = baseY + 20;
@@ -34,8 +36,7 @@ export function ChargePicture({ ticks, twin, voltsHeight = 150, ampsHeight = 66,
       height={height}
       viewBox={`0 0 ${width} ${height}`}
       fill="none"
-      role="img"
-      aria-label={twin}
+      {...(twin === '' ? { 'aria-hidden': true } : { role: 'img', 'aria-label': twin })}
       style={styles.open}
     >
       <Grid lines={drawing.voltLines} left={left} width={width} />

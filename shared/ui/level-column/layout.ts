@@ -1,3 +1,5 @@
+import { pointMarks, type LocaleMarks } from '../format/marks';
+import { clipVoltsNumber } from '../format/quantities';
 import type { StageId } from '../stage/stages';
 import type { ColorRole } from '../theme/tokens';
 import { drawnGroups, type ColumnGroup, type DrawnGroup } from './groups';
@@ -22,6 +24,8 @@ export interface ColumnInput {
   tab?: boolean;
   /** A charge is ruled out below it, V. */
   floorVolts?: number | null;
+  /** Decimal mark of the ends. */
+  marks?: LocaleMarks;
 }
 
 export interface Box {
@@ -87,13 +91,16 @@ const n = (value: number) => Math.round(value * 100) / 100;
 const nameRoom = 22;
 const figureRoom = 44;
 
+/** What stands over one of three groups that stand for many. */
+const rankWord = (rank: DrawnGroup['rank']) => (rank === 'lowest' ? 'low' : rank === 'highest' ? 'high' : rank);
+
 /**
  * Every mark of a level column in px, origin at the top left.
  *
  * Fill = rest voltage, 3 px from the glass (2 in narrow vessels); notch = target, across all vessels.
  */
 export function layoutColumn(input: ColumnInput): ColumnDrawing {
-  const { targetVolts, scale, size, stage, tab = true } = input;
+  const { targetVolts, scale, size, stage, tab = true, marks = pointMarks } = input;
   const { w, gap, h, stroke } = size;
   const groups = drawnGroups(input.groups);
   const near = scale.kind === 'near';
@@ -117,6 +124,7 @@ export function layoutColumn(input: ColumnInput): ColumnDrawing {
     const stripTop = y(targetVolts + input.toleranceVolts);
     const cutY = padT + h - Math.max(7, h * 0.07);
     const slant = Math.min(4, w / 6);
+    const figure = labels && w + gap >= figureRoom ? (group.text ?? rankWord(group.rank)) : undefined;
     const clipY = group.clipVolts == null ? null : y(group.clipVolts);
     return {
       group,
@@ -129,13 +137,11 @@ export function layoutColumn(input: ColumnInput): ColumnDrawing {
       beganY: group.beganVolts == null || near ? null : n(y(group.beganVolts)),
       wall: `M${n(x)} ${padT}v${h}h${w}v${-h}`,
       foot: scale.kind === 'window' ? null : `M${n(x - 3)} ${n(cutY + slant)}L${n(x + w + 3)} ${n(cutY - slant)}`,
-      oddMark: group.odd && !labels ? `M${n(x + w / 2 - 5)} 1h10l-5 8z` : null,
+      // A figure in alarm takes the triangle's place.
+      oddMark: group.odd && figure === undefined ? `M${n(x + w / 2 - 5)} 1h10l-5 8z` : null,
       clipMark: clipY === null ? null : `M${n(x + w + 1)} ${n(clipY)}l6 -4.5v9z`,
       name: labels ? { x: n(x + w / 2), y: height - 5, text: `G${group.number}` } : null,
-      figure:
-        labels && group.text !== undefined && w + gap >= figureRoom
-          ? { x: n(x + w / 2), y: 14, text: group.text }
-          : null,
+      figure: figure === undefined ? null : { x: n(x + w / 2), y: 14, text: figure },
     };
   });
 
@@ -156,8 +162,8 @@ export function layoutColumn(input: ColumnInput): ColumnDrawing {
     footStroke: h > 100 ? 5 : 3.5,
     ends: input.ends
       ? [
-          { x: padL - 6, y: padT + 10, text: high.toFixed(2) },
-          { x: padL - 6, y: padT + h, text: low.toFixed(2) },
+          { x: padL - 6, y: padT + 10, text: clipVoltsNumber(high, marks) },
+          { x: padL - 6, y: padT + h, text: clipVoltsNumber(low, marks) },
         ]
       : [],
   };

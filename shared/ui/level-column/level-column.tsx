@@ -1,5 +1,6 @@
 import { useMemo } from 'react';
 import { G, Path, Rect, Svg, Text as SvgText } from 'react-native-svg';
+import { useFormats } from '../format/formats';
 import { LevelFill } from '../motion/level-fill';
 import type { StageId } from '../stage/stages';
 import { useHalo } from '../theme/surface';
@@ -56,6 +57,7 @@ export function LevelColumn({
 }: LevelColumnProps) {
   const { colors } = useTheme();
   const halo = useHalo();
+  const { marks } = useFormats();
   const drawing = useMemo(
     () =>
       layoutColumn({
@@ -70,10 +72,11 @@ export function LevelColumn({
         ends,
         tab,
         floorVolts,
+        marks,
       }),
-    [groups, targetVolts, toleranceVolts, scale, place, size, stage, reckoned, labels, ends, tab, floorVolts],
+    [groups, targetVolts, toleranceVolts, scale, place, size, stage, reckoned, labels, ends, tab, floorVolts, marks],
   );
-  const words = twin ?? columnTwin({ groups, targetVolts, toleranceVolts, stage, name, reckoned, floorVolts });
+  const words = twin ?? columnTwin({ groups, targetVolts, toleranceVolts, stage, name, reckoned, floorVolts, marks });
   const { width, height, x0, x1, notchY } = drawing;
   const stroke = columnSize(place, groups.length, size).stroke;
   return (

@@ -1,3 +1,4 @@
+import { pointMarks, type LocaleMarks } from '../format/marks';
 import { millivolts, tolerance, volts } from '../format/quantities';
 import { stages, type StageId } from '../stage/stages';
 import { drawnGroups, type ColumnGroup } from './groups';
@@ -14,6 +15,7 @@ export function columnTwin({
   name,
   reckoned,
   floorVolts,
+  marks = pointMarks,
 }: {
   groups: readonly ColumnGroup[];
   targetVolts: number;
@@ -23,6 +25,7 @@ export function columnTwin({
   name?: string;
   reckoned?: boolean;
   floorVolts?: number | null;
+  marks?: LocaleMarks;
 }): string {
   const shown = drawnGroups(groups);
   const told = new Set(shown.map((group) => group.number));
@@ -33,12 +36,12 @@ export function columnTwin({
     const off = group.odd
       ? `, odd, ${millivolts(Math.abs(group.volts - targetVolts))} ${group.volts < targetVolts ? 'below' : 'above'}`
       : '';
-    return `${group.rank ? `${group.rank} ` : ''}G${group.number} ${volts(group.volts)}${off}`;
+    return `${group.rank ? `${group.rank} ` : ''}G${group.number} ${volts(group.volts, marks)}${off}`;
   };
   return [
     `${name ? `${name}: ` : ''}${stages[stage].word}.`,
-    `Target ${volts(targetVolts)}, ${tolerance(toleranceVolts)}.`,
+    `Target ${volts(targetVolts, marks)}, ${tolerance(toleranceVolts)}.`,
     `${[...shown, ...oddOnes].map(of).join(', ')}${reckoned ? ', reckoned from readings under current' : ''}.`,
-    ...(floorVolts == null ? [] : [`Floor ${volts(floorVolts)}.`]),
+    ...(floorVolts == null ? [] : [`Floor ${volts(floorVolts, marks)}.`]),
   ].join(' ');
 }

@@ -2,7 +2,7 @@ import type { ReactNode } from 'react';
 import { View } from 'react-native';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
-import { margin, touch } from '../theme/tokens';
+import { margin, touch, widths } from '../theme/tokens';
 
 /**
  * The foot of a task with the one next step; it replaces the bottom bar. `note` stands small above the buttons: the
@@ -12,18 +12,20 @@ export function Foot({ note, noteId, children }: { note?: ReactNode; noteId?: st
   const styles = useStyles();
   return (
     <View style={styles.foot}>
-      {note ? (
-        <View style={styles.note} nativeID={noteId}>
-          {typeof note === 'string' ? (
-            <Txt kind="small" tone="ink2">
-              {note}
-            </Txt>
-          ) : (
-            note
-          )}
-        </View>
-      ) : null}
-      {children}
+      <View style={styles.inside}>
+        {note ? (
+          <View style={styles.note} nativeID={noteId}>
+            {typeof note === 'string' ? (
+              <Txt kind="small" tone="ink2">
+                {note}
+              </Txt>
+            ) : (
+              note
+            )}
+          </View>
+        ) : null}
+        {children}
+      </View>
     </View>
   );
 }
@@ -44,6 +46,8 @@ const useStyles = makeStyles(({ colors }) => ({
     borderTopWidth: 1.5,
     borderTopColor: colors.line,
   },
+  // On a wide screen the step stands under the one column, not across the page.
+  inside: { width: '100%', maxWidth: widths.single, marginHorizontal: 'auto' },
   note: { marginBottom: 8 },
   row: { flexDirection: 'row', columnGap: touch.gap },
 }));

@@ -32,7 +32,9 @@ export function Screen({
   const narrow = at === 'tablet' || (at === 'wide' && single);
   return (
     <View role="main" style={styles.screen}>
-      <View style={at === 'wide' && styles.wideEdge}>{header}</View>
+      <View style={at === 'wide' ? [styles.wideEdge, styles.page] : at === 'tablet' && styles.singleHead}>
+        {header}
+      </View>
       {strip ?? shellStrip}
       <ScrollView
         style={styles.scroll}
@@ -41,7 +43,7 @@ export function Screen({
       >
         <View style={[styles.column, narrow && styles.single]}>{children}</View>
       </ScrollView>
-      {foot ? <View style={[narrow && styles.single, styles.foot]}>{foot}</View> : null}
+      {foot}
     </View>
   );
 }
@@ -70,5 +72,6 @@ const useStyles = makeStyles(({ colors }) => ({
   page: { width: '100%', maxWidth: widths.page, marginHorizontal: 'auto' },
   column: { flexGrow: 1, width: '100%' },
   single: { maxWidth: widths.single, width: '100%', marginHorizontal: 'auto' },
-  foot: { flexShrink: 0 },
+  // The header keeps its own margins inside the column.
+  singleHead: { maxWidth: widths.single + 2 * margin.phone, width: '100%', marginHorizontal: 'auto' },
 }));

@@ -174,7 +174,8 @@ export const widths = {
   sideMin: 292,
   sideMax: 340,
   gap: 40,
-  page: 1440,
+  // Facts, the grown work column, side, two gaps and the margins; beyond it the page is centred.
+  page: 1698,
   rail: 92,
   railTablet: 72,
 } as const;

@@ -9,6 +9,7 @@ export interface WebOnlyProps {
   'aria-errormessage'?: string;
   'aria-haspopup'?: 'dialog' | 'listbox' | 'menu';
   'aria-invalid'?: boolean;
+  'aria-label'?: string;
   'aria-labelledby'?: string;
   'aria-level'?: number;
   'aria-live'?: 'assertive' | 'polite' | 'off';
