@@ -3,18 +3,16 @@ import type { ChargeFile } from './charge-file';
 import { isChecked, promisedAt } from './charge-due';
 import { restedS } from './charge-progress';
 import { isRunning, type SwapWait } from './charge-stages';
-import { handText, stepsOfSwap } from './charge-steps';
+import { channelNamesOf, handText, stepsOfSwap, titleAtChannel } from './charge-steps';
 import {
   ampHoursText,
   ampsText,
   cellText,
-  channelNamesOf,
   clockText,
   durationText,
   listText,
   millivoltsText,
   plainAmpsText,
-  titleAtChannel,
   titleOf,
 } from './charge-words';
 

@@ -23,7 +23,7 @@ import { durationText } from './charge-words';
 import { newId } from './ids';
 
 /** An alert that comes this much after its cause says so, s. */
-const LATE_S = 60;
+const LATE_S = 120;
 
 interface Wanted {
   kind: AlertKind;

@@ -2,8 +2,9 @@
 import type { CheckCode } from '@/shared/contract/charge';
 import type { Channel } from '../entities/channel';
 import type { ChargeFile } from './charge-file';
+import { channelNamesOf } from './charge-steps';
 import { lookInTimes } from './charge-look-ins';
-import { cellText, channelNamesOf, clockText, groupsText, listText } from './charge-words';
+import { cellText, clockText, groupsText, listText } from './charge-words';
 
 /** What a check says before anybody answers; `by` other than 'person' is locked. */
 export interface CheckWords {

@@ -21,11 +21,12 @@ import { chargeNow, instantOf } from './charge-clock';
 import { overdueSince } from './charge-due';
 import type { ChargeFile } from './charge-file';
 import { nextLookIn } from './charge-look-ins';
-import { reckonAt, validReadings } from './charge-reckoning';
+import { reckonTo } from './charge-progress';
+import { validReadings } from './charge-reckoning';
 import { timedSegments, waitShiftMs } from './charge-segments';
 import { isOpen, isRunning, isUnderWay, isWaitingToStart, swapWait } from './charge-stages';
-import { handText } from './charge-steps';
-import { channelNamesOf, listText, titleOf } from './charge-words';
+import { channelNamesOf, handText } from './charge-steps';
+import { listText, titleOf } from './charge-words';
 import { startBlock } from './start-block';
 import { toInstant, toOptionalInstant } from './instants';
 
@@ -89,10 +90,8 @@ function nextHand(file: ChargeFile): string | null {
 function cardChannels(file: ChargeFile): string[] {
   const { charge, channels } = file;
   const running = isUnderWay(charge.stage) || charge.stage === 'ready';
-  const ids = running
-    ? (charge.option.steps[charge.reckoning?.reckoning.stepIndex ?? 0]?.channelIds ?? [])
-    : charge.option.channelIds;
-  return [...new Set(ids)].map((id) => channels.get(id)?.name ?? 'gone');
+  if (running) return channelNamesOf(file, charge.reckoning?.reckoning.stepIndex ?? 0);
+  return [...new Set(charge.option.channelIds)].map((id) => channels.get(id)?.name ?? 'gone');
 }
 
 /** A charge as board, bench, wall and lists show it. */
@@ -183,7 +182,7 @@ export async function chargeDto(
     expected: expectedOf(fresh),
     checks: sheet.items,
     startBlockedBy: isWaitingToStart(charge.stage) ? await startBlock(manager, file, sheet) : null,
-    readings: file.readings.map((reading) => readingDto(file, reading, member)),
+    readings: byTime(file.readings).map((reading) => readingDto(file, reading, member)),
     restChecks: file.restChecks.map((check) => restCheckDto(file, check)),
     events: events.map((event) => eventDto(file, event)),
     dominant: reckoning?.dominant ?? charge.option.dominant,
@@ -191,6 +190,9 @@ export async function chargeDto(
     labelUrl: `${config.publicUrl ?? localUrl(config)}/charges/${charge.id}`,
   };
 }
+
+const byTime = (readings: readonly ChargeReading[]): ChargeReading[] =>
+  [...readings].sort((one, other) => one.at - other.at || one.createdAt - other.createdAt);
 
 const localUrl = (config: Config): string =>
   `${config.tls === null ? 'http' : 'https'}://${config.host === '0.0.0.0' ? 'localhost' : config.host}:${config.port}`;
@@ -204,7 +206,9 @@ function freshened(file: ChargeFile, now: number): ChargeFile {
   const at = chargeNow(charge, now);
   const flows = isRunning(charge.stage) || charge.stage === 'resting';
   if (!flows || charge.reckoning === null || at - charge.reckoning.at < FRESH_MS) return file;
-  return { ...file, charge: { ...charge, reckoning: { at, reckoning: reckonAt(file, at) } } };
+  const fresh = { ...file, charge: { ...charge } };
+  reckonTo(fresh, now);
+  return fresh;
 }
 
 function expectedOf({ charge }: ChargeFile): ChargeDto['expected'] {

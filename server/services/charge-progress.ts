@@ -3,8 +3,8 @@ import type { ChargeFile } from './charge-file';
 import { chargeNow, instantOf } from './charge-clock';
 import { reckonAt } from './charge-reckoning';
 import { isUnderWay, stageFrom, swapWait } from './charge-stages';
-import { handText } from './charge-steps';
-import { ampHoursText, ampsText, clockText, durationText, listText, channelNamesOf } from './charge-words';
+import { channelNamesOf, handText } from './charge-steps';
+import { ampHoursText, ampsText, clockText, durationText, listText } from './charge-words';
 
 /** Something that happened, for the log of the charge. */
 export interface Note {
@@ -17,6 +17,20 @@ export interface Note {
 const rank = (stage: Stage): number => ['charging', 'tapering', 'resting', 'check-due'].indexOf(plain(stage));
 const plain = (stage: Stage): Stage => (stage === 'discharging' ? 'charging' : stage);
 
+/** Reckons a started charge for `now` and sets what follows from it but the stage: its instants and its band. */
+export function reckonTo(file: ChargeFile, now: number): void {
+  const { charge } = file;
+  const at = chargeNow(charge, now);
+  const reckoning = reckonAt(file, at);
+  charge.reckoning = { at, reckoning };
+  charge.taperAt = reckoning.taperAtS === null ? null : instantOf(charge, reckoning.taperAtS);
+  if (!charge.currentOffSaid) charge.currentEndAt = instantOf(charge, reckoning.currentEndS);
+  charge.checkDueAt = instantOf(charge, reckoning.restEndS);
+  charge.earlyAt = instantOf(charge, reckoning.readyS.p10);
+  charge.likelyAt = instantOf(charge, reckoning.readyS.p50);
+  charge.lateAt = instantOf(charge, reckoning.readyS.p90);
+}
+
 /**
  * Brings a charge to the stage its plan and its readings say for `now`: reckons it, sets stage and instants, and gives
  * what happened on the way, each at the instant it happened. Leaves a charge alone that is not under way.
@@ -28,15 +42,8 @@ export function progress(file: ChargeFile, now: number): Note[] {
   const stepBefore = charge.reckoning?.reckoning.stepIndex ?? 0;
   const waitedBefore = swapWait(file) !== null;
 
-  const at = chargeNow(charge, now);
-  const reckoning = reckonAt(file, at);
-  charge.reckoning = { at, reckoning };
-  charge.taperAt = reckoning.taperAtS === null ? null : instantOf(charge, reckoning.taperAtS);
-  if (!charge.currentOffSaid) charge.currentEndAt = instantOf(charge, reckoning.currentEndS);
-  charge.checkDueAt = instantOf(charge, reckoning.restEndS);
-  charge.earlyAt = instantOf(charge, reckoning.readyS.p10);
-  charge.likelyAt = instantOf(charge, reckoning.readyS.p50);
-  charge.lateAt = instantOf(charge, reckoning.readyS.p90);
+  reckonTo(file, now);
+  const reckoning = charge.reckoning!.reckoning;
   if (stageBefore === 'held') return [];
 
   charge.stage = stageFrom(reckoning, charge.direction);

@@ -1,3 +1,4 @@
+import { channelNamesOf } from './charge-steps';
 import { groupCountProblem, groupVoltsProblem } from '@/shared/contract/group-volts';
 import type { ChargeDto, ReadingInput } from '@/shared/contract/charge';
 import type { Deps, Member } from '../deps';
@@ -9,7 +10,7 @@ import { actInstant } from './charge-instants';
 import { isOpen, isUnderWay } from './charge-stages';
 import { wrongStage } from './charge-stage-conflict';
 import { markVisit } from './charge-visit';
-import { ampsText, bare, celsiusText, cellText, channelNamesOf, clipText, clockText, listText } from './charge-words';
+import { ampsText, bare, celsiusText, cellText, clipText, clockText, listText } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
 

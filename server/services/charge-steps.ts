@@ -5,7 +5,7 @@
 import type { PlannedStep, PlanOption } from '@/calc/plan-types';
 import type { RunStretch } from '../entities/run-stretch';
 import type { ChargeFile } from './charge-file';
-import { channelNamesOf, groupsText, listText } from './charge-words';
+import { groupsText, listText, titleOf } from './charge-words';
 
 /** Ends a run stretch because the clips go to the next step. */
 export const SWAP_REASON = 'next step';
@@ -51,22 +51,54 @@ export function stepOfEachRun(option: Pick<PlanOption, 'steps'>, runs: readonly 
   return runs.map((_, index) => begunStep(option, runs.slice(0, index)));
 }
 
-/** What the hand does for a step: 'Swap B1 to group 2'. */
-export function handText(file: Pick<ChargeFile, 'charge' | 'channels'>, stepIndex: number): string {
-  const { steps } = file.charge.option;
-  const step = steps[stepIndex]!;
-  const before = steps[stepIndex - 1];
-  const names = channelNamesOf(file, stepIndex);
-  const where = stepPlace(step, file.charge.option.endGroupVolts.length);
-  if (names.length === 0) return `Put the resistor across ${where}`;
-  const moved = before !== undefined && names.every((_, index) => before.channelIds.includes(step.channelIds[index]!));
-  const joins = step.way === 'paralleled' && before !== undefined && before.kind === 'pre-level';
-  if (joins) return `Join the groups and clip on ${listText(names)}`;
-  return `${moved ? 'Swap' : 'Clip'} ${listText(names)} ${moved ? 'to' : 'on'} ${where}`;
+/** Names of the channels that run with a step, those side by side with it too; empty for a resistor alone. */
+export function channelNamesOf(file: Pick<ChargeFile, 'charge' | 'channels'>, stepIndex: number): string[] {
+  const { option } = file.charge;
+  const ids = roundOf(option, stepIndex).flatMap((index) => option.steps[index]!.channelIds);
+  return [...new Set(ids)].map((id) => nameOf(file, id));
 }
 
-function stepPlace(step: PlannedStep, groupCount: number): string {
-  if (step.way === 'terminals' && step.groupIndexes.length === groupCount) return 'the terminals';
+const nameOf = (file: Pick<ChargeFile, 'channels'>, id: string): string =>
+  file.channels.get(id)?.name ?? 'a channel that is gone';
+
+/** The steps begun together with this one, whichever of them it is. */
+function roundOf(option: Pick<PlanOption, 'steps'>, stepIndex: number): number[] {
+  const first = swapStarts(option).findLast((start) => start <= stepIndex);
+  return first === undefined ? [] : stepsOfSwap(option, first);
+}
+
+/** 'R-2406 at B2'; without a channel its title alone. */
+export function titleAtChannel(file: Pick<ChargeFile, 'charge' | 'channels'>, stepIndex: number): string {
+  const names = channelNamesOf(file, stepIndex);
+  return names.length === 0 ? titleOf(file.charge) : `${titleOf(file.charge)} at ${listText(names)}`;
+}
+
+/** What the hand does for a step: 'Swap B1 to group 2', 'Swap A1 to group 3 and C1 to group 4'. */
+export function handText(file: Pick<ChargeFile, 'charge' | 'channels'>, stepIndex: number): string {
+  const { option } = file.charge;
+  const { steps } = option;
+  const step = steps[stepIndex]!;
+  const before = roundOf(option, stepIndex - 1).flatMap((index) => steps[index]!.channelIds);
+  if (step.channelIds.length === 0) return `Put the resistor across ${stepPlace(file, step)}`;
+  if (step.way === 'paralleled' && steps[stepIndex - 1]?.kind === 'pre-level')
+    return `Join the groups and clip on ${listText(channelNamesOf(file, stepIndex))}`;
+  const parts = stepsOfSwap(option, stepIndex).map((index) => {
+    const one = steps[index]!;
+    const names = listText(one.channelIds.map((id) => nameOf(file, id)));
+    const moved = one.channelIds.every((id) => before.includes(id));
+    return { verb: moved ? 'Swap' : 'Clip', text: `${names} ${moved ? 'to' : 'on'} ${stepPlace(file, one)}` };
+  });
+  return listText(
+    parts.map(({ verb, text }, place) => {
+      if (place === 0) return `${verb} ${text}`;
+      return verb === parts[place - 1]!.verb ? text : `${verb.toLowerCase()} ${text}`;
+    }),
+  );
+}
+
+function stepPlace({ charge }: Pick<ChargeFile, 'charge'>, step: PlannedStep): string {
+  if (step.way === 'terminals' && step.groupIndexes.length === charge.frozen.module.groupsInSeries)
+    return 'the terminals';
   if (step.way === 'paralleled') return 'the joined groups';
   return groupsText(step.groupIndexes);
 }

@@ -1,6 +1,5 @@
 /** Numbers and names as the sentences of charges, events and alerts carry them (look: §7, §8). */
 import { DateTime } from 'luxon';
-import type { ChargeFile } from './charge-file';
 
 const GAP = '\u00a0';
 const minus = (digits: string): string => digits.replace(/^-/, '−');
@@ -56,15 +55,3 @@ export const bare = (text: string): string => text.trim().replace(/[.\s]+$/, '')
 /** The repair where there is one, else the charge's number. */
 export const titleOf = (charge: { repairRef: string | null; number: string }): string =>
   charge.repairRef ?? charge.number;
-
-/** Names of the channels of a step; empty for one through a resistor alone. */
-export function channelNamesOf(file: Pick<ChargeFile, 'charge' | 'channels'>, stepIndex: number): string[] {
-  const ids = file.charge.option.steps[stepIndex]?.channelIds ?? [];
-  return ids.map((id) => file.channels.get(id)?.name ?? 'a channel that is gone');
-}
-
-/** 'R-2406 at B2'; without a channel its title alone. */
-export function titleAtChannel(file: Pick<ChargeFile, 'charge' | 'channels'>, stepIndex: number): string {
-  const names = channelNamesOf(file, stepIndex);
-  return names.length === 0 ? titleOf(file.charge) : `${titleOf(file.charge)} at ${listText(names)}`;
-}

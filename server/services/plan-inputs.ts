@@ -15,6 +15,7 @@ import type { SpareReading } from '../entities/spare-reading';
 import { conflict, invalid, notFound } from '../errors/domain-error';
 import { listUsableChannels } from '../repositories/chargers.repository';
 import { listMeters } from '../repositories/meters.repository';
+import { findLastStartedOfSpare } from '../repositories/charges.repository';
 import { findModuleType } from '../repositories/module-types.repository';
 import { listOpenHolds } from '../repositories/open-holds.repository';
 import { listResistors } from '../repositories/resistors.repository';
@@ -176,6 +177,12 @@ async function plannedSpare(
   if (!type) throw notFound('The type of this spare');
   const reading = await findLastSpareReading(manager, workshopId, spare.id);
   if (!reading) throw invalid({ spareId: `${spare.label} has no reading. Read its groups first.` });
+  // What a charge has brought in since is only reckoned; planned from the old reading it would be brought in twice.
+  const moved = await findLastStartedOfSpare(manager, workshopId, spare.id);
+  if (moved !== null && moved.startedAt !== null && moved.startedAt > reading.at)
+    throw invalid({
+      spareId: `${spare.label} has been on ${titleOf(moved)} since its last reading. Read its groups first.`,
+    });
   return { spare, type, reading };
 }
 

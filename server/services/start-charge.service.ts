@@ -14,9 +14,9 @@ import { findCharge, updateCharge } from '../repositories/charges.repository';
 import { checkSheet, sheetBlock } from './charge-checks';
 import { actInstant } from './charge-instants';
 import { stageFrom, isWaitingToStart } from './charge-stages';
-import { stepsOfSwap } from './charge-steps';
+import { channelNamesOf, stepsOfSwap } from './charge-steps';
 import { wrongStage } from './charge-stage-conflict';
-import { ampsText, channelNamesOf, clipText, clockText, listText, titleOf } from './charge-words';
+import { ampsText, clipText, clockText, listText, titleOf } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
 import { holdersOfStep, takenText } from './start-block';
@@ -112,6 +112,12 @@ export async function takeChannels(
   const { charge, channels } = file;
   const steps = stepsOfSwap(charge.option, stepIndex);
   const holds = file.holds.filter((hold) => steps.includes(hold.stepIndex));
+  // The step before lets go first: its channel may be the one that the next step takes.
+  for (const hold of file.holds.filter((one) => one.state === 'running')) {
+    const patch = { state: 'released' as const, toAt: file.runs.at(-2)?.toAt ?? at };
+    await updateHold(manager, charge.workshopId, hold.id, patch);
+    Object.assign(hold, patch);
+  }
   for (const hold of holds) {
     const patch = { state: 'running' as const, fromAt: at, toAt: null };
     await updateHold(manager, charge.workshopId, hold.id, patch);

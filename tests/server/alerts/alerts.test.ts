@@ -19,7 +19,7 @@ async function checkDue(more: object = {}): Promise<ChargeDto> {
   const charge = await running(bench, { spareId: await bench.spare('S-0402'), repairRef: 'R-2409', ...more });
   await until(at(charge.currentEndAt) + minute, 5 * minute);
   const off = await did(bench, await seen(bench, charge.id), 'current-off');
-  await until(at(off.checkDueAt) + 1000, 5 * minute);
+  await until(at(off.checkDueAt), 5 * minute);
   return seen(bench, charge.id);
 }
 

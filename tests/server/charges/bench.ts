@@ -198,6 +198,7 @@ export async function planned(bench: Bench, wish: Wish, meant: Meant = {}): Prom
 /** Keeps a plan as a charge. */
 export async function kept(bench: Bench, wish: Wish, meant: Meant = {}, role: Role = 'technician'): Promise<ChargeDto> {
   const option = await planned(bench, wish, meant);
+  bench.server.clock.advance(1);
   const answer = await bench
     .as(role)
     .post('/api/charges', { ...wishOf(bench, wish), optionId: option.id })
@@ -205,6 +206,13 @@ export async function kept(bench: Bench, wish: Wish, meant: Meant = {}, role: Ro
   expect(answer.status, JSON.stringify(answer.body)).toBe(201);
   return answer.body as ChargeDto;
 }
+
+/**
+ * Gives every charge the same sample set. Its seed belongs to the spare and its reading, which have other ids in every
+ * test; where two charges are compared to the second, their bands must not differ by the draw.
+ */
+export const sameSamples = (bench: Bench): Promise<unknown> =>
+  bench.server.deps.dataSource.query(`UPDATE charge SET frozen = json_set(frozen, '$.seed', 7)`);
 
 /** Answers with yes what a person has to answer. */
 export async function answered(bench: Bench, charge: ChargeDto, role: Role = 'technician'): Promise<ChargeDto> {

@@ -5,12 +5,7 @@ import { act, alertsOf, at, boardOf, did, hour, makeBench, minute, running, seen
 let bench: Bench;
 beforeEach(async () => {
   // One channel that clips to a single group: the two groups are charged one after the other.
-  bench = await makeBench({
-    channels: [
-      { name: 'C1', singleGroup: true },
-      { name: 'D1', singleGroup: true, maxAmps: 5 },
-    ],
-  });
+  bench = await makeBench({ channels: [{ name: 'C1', singleGroup: true }] });
 });
 afterEach(() => bench.server.close());
 
@@ -84,4 +79,37 @@ test('a step ended by hand, earlier than reckoned, is taken and said in the log'
   expect(swapped.events.at(-1)!.text).toContain('earlier than reckoned');
   // A third of an hour at 10 A went in.
   expect(swapped.deliveredAh).toBeCloseTo(10 / 3, 1);
+});
+
+test('two channels side by side: both run from the start, the longer one ends the current, and no hand is asked for', async () => {
+  const wide = await makeBench({
+    channels: [
+      { name: 'C1', singleGroup: true },
+      { name: 'D1', singleGroup: true, maxAmps: 5 },
+    ],
+  });
+  try {
+    const charge = await running(
+      wide,
+      { spareId: await wide.spare('S-0422', [3.802, 3.83]), repairRef: 'R-9' },
+      { way: 'group-by-group', channel: 'C1' },
+    );
+    expect(charge.channelNames).toEqual(['C1', 'D1']);
+    expect(charge.amps).toBeCloseTo(15, 1);
+    const board = await boardOf(wide);
+    expect(board.channels.map((channel) => channel.chargeTitle)).toEqual(['R-9', 'R-9']);
+    const hours = charge.option.steps.map((step) => step.ampHours / step.setAmps!);
+    const longest = Math.max(...hours) * hour;
+    expect((at(charge.currentEndAt) - at(charge.startedAt)) / longest).toBeCloseTo(1, 1);
+    await wide.live(Math.min(...hours) * hour + 5 * minute, 5 * minute);
+    const half = await seen(wide, charge.id);
+    expect(half.nextHand).toBeNull();
+    expect(half.amps!).toBeLessThan(11);
+    await wide.live(at(half.currentEndAt) - wide.server.clock.now() + 2 * minute, 5 * minute);
+    const resting = await seen(wide, charge.id);
+    expect(resting.stage).toBe('resting');
+    expect(resting.nextHand).toBe('Switch C1 and D1 off');
+  } finally {
+    await wide.server.close();
+  }
 });
