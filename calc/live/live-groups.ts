@@ -2,7 +2,7 @@ import type { ReckonInput, Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
 import { livePast, type LivePast, type LiveRound } from './live-rounds';
 import { restVolts, type ModuleState } from './module-state';
-import { socOf, withSeenDifferences } from './rest-readings';
+import { socsOf, withSeenDifferences } from './rest-readings';
 
 /** A lag below this is noise, V. */
 const LAG_LEAST_VOLTS = 0.001;
@@ -24,7 +24,7 @@ export function toGroups(
 ): LiveGroups {
   const reckoned = restVolts(model, past.state.soc);
   const rest = seenAtRest ? [...seenAtRest] : withSeenDifferences(reckoned, seenUnderCurrent(model, input, current));
-  const soc = socOf(model, rest);
+  const soc = socsOf(model, rest);
   const groups = rest.map((volts, group) => ({
     restVolts: volts,
     soc: soc[group]!,

@@ -1,4 +1,5 @@
-import { socAtVolts, voltsAtSoc } from '../curve/ocv';
+import { voltsAtSoc } from '../curve/ocv';
+import { socOf } from '../plan/soc-of';
 import type { PlannedStep } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
 import type { Drive, Forward, Lane } from './lane';
@@ -13,7 +14,7 @@ import type { ModuleState } from './module-state';
  */
 export function resistorLane(model: PlanModel, step: PlannedStep, index: number, socBefore: readonly number[]): Lane {
   const sign = step.direction === 'charge' ? 1 : -1;
-  const socAfter = step.restVoltsAfter.map((volts) => socAtVolts(model.curve, volts));
+  const socAfter = step.restVoltsAfter.map((volts) => socOf(model.curve, volts));
   const lastAmps = Math.max(Math.abs(step.endAmps), 1e-6);
   const firstAmps = peakAmps(step.ampHours, step.stopS - step.startS, lastAmps);
   const anchor = step.groupIndexes[0]!;

@@ -1,4 +1,4 @@
-import { socAtVolts } from '../curve/ocv';
+import { socOf } from '../plan/soc-of';
 import type { LiveReading } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
 import type { ModuleState } from './module-state';
@@ -66,5 +66,5 @@ export function withSeenDifferences(
 }
 
 /** States of charge of rest voltages. */
-export const socOf = (model: PlanModel, restVolts: readonly number[]): number[] =>
-  restVolts.map((volts) => socAtVolts(model.curve, volts));
+export const socsOf = (model: PlanModel, restVolts: readonly number[]): number[] =>
+  restVolts.map((volts) => socOf(model.curve, volts));

@@ -1,4 +1,4 @@
-import { socAtVolts } from '../curve/ocv';
+import { socOf } from './soc-of';
 import { CalcInputError } from '../errors';
 import { CHEMISTRIES } from '../parameters/chemistries';
 import type { CheckVerdict, ModuleParameters, TargetState } from '../plan-types';
@@ -28,11 +28,11 @@ export function judgeCheck(
     throw new CalcInputError('target.toleranceVolts', target.toleranceVolts, 'a number above 0');
   const chemistry = CHEMISTRIES[module.chemistry];
   const curve = module.curve ?? chemistry.curve;
-  const targetSoc = socAtVolts(curve, target.volts);
+  const targetSoc = socOf(curve, target.volts);
   const groups = groupVolts.map((volts, group) => {
     const capacity = Array.isArray(capacityAh) ? capacityAh[group]! : capacityAh;
     const deviationVolts = volts - target.volts;
-    const stays = (targetSoc - socAtVolts(curve, volts)) * capacity;
+    const stays = (targetSoc - socOf(curve, volts)) * capacity;
     return {
       group,
       volts,

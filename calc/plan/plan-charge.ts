@@ -64,6 +64,14 @@ export function planCharge(input: PlanInput): ChargePlan {
       plan.ruledOut.push({ way, finish, channelId: channel.id, channelName: channel.name, reason: found.reason });
     }
   };
+  if (input.channels.length === 0 && input.neighbour === null)
+    plan.ruledOut.push({
+      way: 'terminals',
+      finish: 'over-and-settle',
+      channelId: null,
+      channelName: null,
+      reason: 'No channel is in use here. Add a charger with its channels first.',
+    });
   forEachWay(model, take);
   plan.options.sort((a, b) => a.totalS.p50 - b.totalS.p50 || a.handsOnS - b.handsOnS);
   leaveOutLong(plan, model);

@@ -1,4 +1,5 @@
-import { socAtVolts, voltsAtSoc } from '../curve/ocv';
+import { voltsAtSoc } from '../curve/ocv';
+import { socOf } from './soc-of';
 import { CHEMISTRIES } from '../parameters/chemistries';
 import { temperatureVolts } from '../parameters/temperature-coefficient';
 import { splitLongResistance, longResistance } from '../resistance/long-resistance';
@@ -55,7 +56,7 @@ export function planModel(input: PlanInput): PlanModel {
   const lostSoc =
     ((module.selfDischargePerMonth ?? chemistry.selfDischargePerMonth) * Math.max(0, spare.readingAgeS)) / MONTH_S;
   const readVolts = atTargetTemperature(input, curve);
-  const startSoc = readVolts.map((volts) => socAtVolts(curve, volts) - lostSoc);
+  const startSoc = readVolts.map((volts) => socOf(curve, volts) - lostSoc);
   const startVolts = startSoc.map((soc) => voltsAtSoc(curve, soc));
   const spreads = spreadsOf(input, chemistry.hysteresisVolts);
   const basis: SampleBasis = {
@@ -83,7 +84,7 @@ export function planModel(input: PlanInput): PlanModel {
     startSoc,
     startVolts,
     targetVolts: target.volts,
-    targetSoc: socAtVolts(curve, target.volts),
+    targetSoc: socOf(curve, target.volts),
     toleranceVolts: target.toleranceVolts,
     direction: sum <= target.volts * startVolts.length ? 'charge' : 'discharge',
     celsius,
@@ -105,7 +106,7 @@ function atTargetTemperature({ module, spare, target }: PlanInput, curve: OcvTab
   const coefficient = CHEMISTRIES[module.chemistry].temperatureCoefficient;
   if (from === null || to === null || coefficient === null) return [...spare.groupVolts];
   return spare.groupVolts.map((volts) => {
-    const soc = socAtVolts(curve, volts);
+    const soc = socOf(curve, volts);
     return volts + temperatureVolts(coefficient, soc, to) - temperatureVolts(coefficient, soc, from);
   });
 }

@@ -1,4 +1,5 @@
-import { voltsAtSoc, socAtVolts } from '../curve/ocv';
+import { voltsAtSoc } from '../curve/ocv';
+import { socOf } from './soc-of';
 import { equaliseThroughResistor } from '../equalise-through-resistor';
 import { splitLongResistance } from '../resistance/long-resistance';
 import type { NeighbourState, ResistorParameters } from '../plan-types';
@@ -162,7 +163,7 @@ function sampleRun(
     const factor = sample.capacityAh[0]! / model.nominal.capacityAh[0]!;
     const other = stringCharge(
       model.curve,
-      otherSide.map((group) => socAtVolts(model.curve, group.restVolts + sample.spareShiftVolts)),
+      otherSide.map((group) => socOf(model.curve, group.restVolts + sample.spareShiftVolts)),
       otherSide.map((group) => (-sign * (sign > 0 ? 1 : model.efficiency)) / (group.capacityAh * factor)),
     );
     const goal = aim.sumVolts + all.length * sample.targetShiftVolts;

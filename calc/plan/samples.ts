@@ -1,6 +1,6 @@
 import type { OcvTable } from '../types';
 import type { Doubt, Spreads } from '../plan-types';
-import { socAtVolts } from '../curve/ocv';
+import { socOf } from './soc-of';
 import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { latinHypercube } from '../statistics/latin-hypercube';
@@ -117,8 +117,8 @@ function toSample(basis: SampleBasis, point: readonly number[]): Sample {
     spreads.hysteresisVolts * even('target-hysteresis');
   const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * normal('self-discharge'));
   return {
-    startSoc: basis.readVolts.map((volts) => socAtVolts(curve, volts + spareShift) - lost),
-    targetSoc: socAtVolts(curve, basis.targetVolts + targetShiftVolts),
+    startSoc: basis.readVolts.map((volts) => socOf(curve, volts + spareShift) - lost),
+    targetSoc: socOf(curve, basis.targetVolts + targetShiftVolts),
     capacityAh: basis.capacityAh.map((ampHours) => ampHours * capacityFactor),
     longOhm: basis.longOhm.map((ohm) => ohm * resistanceFactor),
     currentFactor: Math.exp(spreads.currentRelative * normal('current')),

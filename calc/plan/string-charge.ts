@@ -51,7 +51,7 @@ export function ampHoursToVolts(string: StringCharge, volts: number): number {
   while ((stringVolts(string, high) - volts) * sign < 0) {
     low = high;
     high *= 2;
-    if (high > 1e4 * whole) return Infinity;
+    if (high > 1e4 * whole) return ampHoursToCurveEnd(string);
   }
   let at = (low + high) / 2;
   for (let pass = 0; pass < 60; pass += 1) {
@@ -70,6 +70,12 @@ export function ampHoursToVolts(string: StringCharge, volts: number): number {
     at = next;
   }
   return at;
+}
+
+/** Ampere-hours until the last group is at the end of its curve: as far as a curve that is level there can tell. */
+function ampHoursToCurveEnd({ curve, alike }: StringCharge): number {
+  const end = alike[0]!.socPerAmpHour > 0 ? curve.soc[curve.soc.length - 1]! : curve.soc[0]!;
+  return Math.max(0, ...alike.map(({ soc, socPerAmpHour }) => (end - soc) / socPerAmpHour));
 }
 
 /** Ampere-hours until the first group is at `targetSoc`; below 0 where one is past it. */
