@@ -1,0 +1,127 @@
+import { View } from 'react-native';
+import type { MeterDto } from '@/shared/contract/equipment';
+import type { SpareDto } from '@/shared/contract/spare';
+import { useFormats } from '../format/formats';
+import { volts } from '../format/quantities';
+import { DateTimeField } from '../primitives/date-time-field';
+import { Field } from '../primitives/field';
+import { Select } from '../primitives/select';
+import { makeStyles } from '../theme/make-styles';
+import type { PlanField, PlanTyped } from './plan-typed';
+
+/** From spare to pack: everything a plan is made of, typed. */
+export function PlanFields({
+  typed,
+  errors,
+  spares,
+  meters,
+  today,
+  toleranceHint,
+  onChange,
+  onLeave,
+}: {
+  typed: PlanTyped;
+  /** Only of fields that were left, or all after *Checks before clipping on* was tried. */
+  errors: Partial<Record<PlanField, string>>;
+  spares: readonly SpareDto[] | undefined;
+  meters: readonly MeterDto[] | undefined;
+  today: string;
+  toleranceHint: string;
+  onChange: (change: Partial<PlanTyped>) => void;
+  onLeave: (field: PlanField) => void;
+}) {
+  const styles = useStyles();
+  const { marks } = useFormats();
+  const spareWords = (spare: SpareDto) => {
+    const lowest = spare.reading ? `, ${volts(Math.min(...spare.reading.groupVolts), marks)}` : '';
+    const where =
+      spare.where === 'shelf'
+        ? spare.shelfPlace
+          ? `, ${spare.shelfPlace}`
+          : ''
+        : `, ${spare.where === 'charge' ? 'on a charge' : spare.where}`;
+    return `${spare.label} · ${spare.typeName}${lowest}${where}`;
+  };
+  const field = (name: PlanField) => ({
+    value: typed[name],
+    error: errors[name],
+    onChangeText: (text: string) => onChange({ [name]: text }),
+    onBlur: () => onLeave(name),
+  });
+  return (
+    <View style={styles.form}>
+      <Select
+        label="Spare"
+        empty={spares ? 'Choose a spare' : 'Reading the stock'}
+        value={typed.spareId || null}
+        options={(spares ?? []).map((spare) => ({ value: spare.id, label: spareWords(spare) }))}
+        onChange={(spareId) => onChange({ spareId })}
+        onBlur={() => onLeave('spareId')}
+        error={errors.spareId}
+        required
+      />
+      <View style={styles.row}>
+        <View style={styles.half}>
+          <Field label="Pack rests at" kind="decimal" unit="V" required {...field('targetVolts')} />
+        </View>
+        <View style={styles.half}>
+          <Field
+            label="Tolerance"
+            kind="decimal"
+            unit="mV"
+            prefix={undefined}
+            placeholder={toleranceHint}
+            {...field('toleranceMillivolts')}
+          />
+        </View>
+      </View>
+      <View style={styles.row}>
+        <View style={styles.half}>
+          <Select
+            label="Pack read with"
+            value={typed.meterId || 'none'}
+            options={[
+              { value: 'none', label: 'meter not known' },
+              ...(meters ?? []).map((meter) => ({ value: meter.id, label: meter.name })),
+            ]}
+            onChange={(meterId) => onChange({ meterId: meterId === 'none' ? '' : meterId })}
+          />
+        </View>
+        <View style={styles.half}>
+          <Field label="Pack was at" kind="decimal" unit="°C" {...field('packCelsius')} />
+        </View>
+      </View>
+      <View style={styles.row}>
+        <View style={styles.half}>
+          <Field label="Repair" kind="label" {...field('repairRef')} />
+        </View>
+        <View style={styles.half}>
+          <Field label="Module position" kind="label" {...field('modulePosition')} />
+        </View>
+      </View>
+      <DateTimeField
+        label="Ready by"
+        value={{ day: typed.readyDay || today, time: typed.readyTime }}
+        onChange={({ day, time }) => onChange({ readyDay: day, readyTime: time })}
+        onBlur={() => onLeave('readyTime')}
+        today={today}
+        error={errors.readyTime}
+      />
+      <DateTimeField
+        label="Clip on"
+        value={{ day: typed.clipDay || today, time: typed.clipTime }}
+        onChange={({ day, time }) => onChange({ clipDay: day, clipTime: time })}
+        onBlur={() => onLeave('clipTime')}
+        today={today}
+        hint="empty: now"
+        error={errors.clipTime}
+      />
+    </View>
+  );
+}
+
+const useStyles = makeStyles(() => ({
+  form: { rowGap: 14 },
+  row: { flexDirection: 'row', columnGap: 12 },
+  half: { flex: 1, minWidth: 0 },
+}));

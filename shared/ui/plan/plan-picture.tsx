@@ -1,0 +1,53 @@
+import { useState } from 'react';
+import { View } from 'react-native';
+import type { PlanOption } from '@/calc/plan-types';
+import { ChargePicture } from '../charts/charge-picture';
+import { ChartFrame } from '../charts/chart-frame';
+import { PictureTable } from '../charts/picture-table';
+import { clock } from '../format/clock';
+import { useFormats } from '../format/formats';
+import { volts } from '../format/quantities';
+import { clockTicks } from '../wait-ribbon/ticks';
+import { optionTitle } from './way-words';
+
+/** Volts and amps of the chosen way against the clock. Loaded late: it brings the charts. */
+export default function PlanPicture({
+  option,
+  clipOnAt,
+  targetVolts,
+}: {
+  option: PlanOption;
+  clipOnAt: number;
+  targetVolts: number;
+}) {
+  const { zone, marks } = useFormats();
+  const [width, setWidth] = useState(0);
+  const toS = Math.max(option.totalS.p90, option.trace.at(-1)?.s ?? 0);
+  const restBand = option.trace.flatMap(({ s, restLowVolts, restHighVolts }) =>
+    restLowVolts === undefined || restHighVolts === undefined ? [] : [{ s, low: restLowVolts, high: restHighVolts }],
+  );
+  const at = (s: number) => clock(clipOnAt + s * 1000, zone, marks);
+  return (
+    <View onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))}>
+      {width === 0 || option.trace.length < 2 ? null : (
+        <ChartFrame
+          heading={optionTitle(option)}
+          note="Volts per group: line at the clips, dashes the rest voltage, mark the target. Below, amps. The comb is when it will be ready."
+          picture={
+            <ChargePicture
+              width={width}
+              trace={option.trace}
+              segments={option.segments}
+              band={option.totalS}
+              targetVolts={targetVolts}
+              restBand={restBand.length > 1 ? restBand : undefined}
+              ticks={clockTicks({ zeroInstant: clipOnAt, fromS: 0, toS, width, zone, marks })}
+              twin={`${optionTitle(option)}: the groups come to ${volts(targetVolts, marks)} at rest, ready ${at(option.totalS.p50)}, between ${at(option.totalS.p10)} and ${at(option.totalS.p90)}.`}
+            />
+          }
+          table={<PictureTable trace={option.trace} at={at} />}
+        />
+      )}
+    </View>
+  );
+}

@@ -1,0 +1,62 @@
+import { View } from 'react-native';
+import type { ChargePlan, PlanOption } from '@/calc/plan-types';
+import { duration } from '../format/duration';
+import { useFormats } from '../format/formats';
+import { amps, ampHours, volts } from '../format/quantities';
+import { Caution } from '../primitives/call-out';
+import { Txt } from '../primitives/txt';
+import { doubtWords, wayNames } from './way-words';
+
+const stepNames = { 'pre-level': 'Pre-level', bulk: 'Bulk', trim: 'Trim' } as const;
+
+/** What is dialled in and taken apart, step by step. */
+export function WhatItTakes({ option, channelNames }: { option: PlanOption; channelNames: (id: string) => string }) {
+  const { marks } = useFormats();
+  return (
+    <View style={{ rowGap: 6 }}>
+      <Txt kind="heading" heading={2}>
+        What it takes
+      </Txt>
+      <Txt>{option.takes}</Txt>
+      {option.steps.map((step, index) => (
+        <Txt key={`${step.kind} ${index}`} kind="small" tone="ink2">
+          {[
+            option.steps.length > 1 ? `${index + 1}. ${stepNames[step.kind]}` : wayNames[step.way],
+            step.channelIds.map(channelNames).join(', '),
+            step.kind === 'bulk' && option.steps.length === 1
+              ? ''
+              : `G${step.groupIndexes.map((group) => group + 1).join(', G')}`,
+            step.setVolts === null ? '' : `set ${volts(step.setVolts, marks)}`,
+            step.setAmps === null ? '' : amps(step.setAmps, marks),
+            ampHours(step.ampHours, marks),
+            `${duration(step.stopS - step.startS, 'minute')} of current`,
+          ]
+            .filter(Boolean)
+            .join(' · ')}
+        </Txt>
+      ))}
+    </View>
+  );
+}
+
+/** Which number makes most of the band, and every caution of the plan and the way. */
+export function HowFarToTrustIt({ option, plan }: { option: PlanOption; plan: ChargePlan }) {
+  const doubt = doubtWords[option.dominant];
+  const cautions = [...plan.cautions, ...option.cautions].filter(
+    (caution, index, all) => all.findIndex((other) => other.text === caution.text) === index,
+  );
+  return (
+    <View style={{ rowGap: 8 }}>
+      <Txt kind="heading" heading={2}>
+        How far to trust it
+      </Txt>
+      <Txt>
+        {`Most of the band comes from ${doubt.name}.`}
+        {option.narrowsByS >= 60 ? ` ${doubt.advice} would narrow it by ${duration(option.narrowsByS)}.` : ''}
+      </Txt>
+      {cautions.map((caution) => (
+        <Caution key={caution.text}>{caution.text}</Caution>
+      ))}
+    </View>
+  );
+}

@@ -1,0 +1,80 @@
+/** What is typed into a plan, and the request it makes. Pure. */
+import type { PlanRequest } from '@/shared/contract/plan';
+import { planSchema } from '@/shared/contract/plan';
+import { parseTimeOfDay } from '../format/parse';
+import { instantOfDay } from '../format/zone';
+
+/** As typed; instants are a day of the workshop's zone and a time of day. */
+export interface PlanTyped {
+  spareId: string;
+  targetVolts: string;
+  toleranceMillivolts: string;
+  meterId: string;
+  packCelsius: string;
+  repairRef: string;
+  modulePosition: string;
+  readyDay: string;
+  readyTime: string;
+  clipDay: string;
+  clipTime: string;
+}
+
+export type PlanField = keyof PlanTyped;
+
+export const emptyPlan: PlanTyped = {
+  spareId: '',
+  targetVolts: '',
+  toleranceMillivolts: '',
+  meterId: '',
+  packCelsius: '',
+  repairRef: '',
+  modulePosition: '',
+  readyDay: '',
+  readyTime: '',
+  clipDay: '',
+  clipTime: '',
+};
+
+const noTime = 'This is no time. Type it like 18:15.';
+
+/** The instant of a day and a typed time, ISO; null where no time is typed; undefined where it is none. */
+function typedInstant(day: string, time: string, today: string, zone: string): string | null | undefined {
+  if (time.trim() === '') return null;
+  const minutes = parseTimeOfDay(time);
+  if (minutes === null) return undefined;
+  return new Date(instantOfDay(day || today, minutes, zone)).toISOString();
+}
+
+/** The request that was typed, and the sentence at each field that keeps it from being one. */
+export function requestOf(
+  typed: PlanTyped,
+  { zone, today, now }: { zone: string; today: string; now: number },
+): { request: PlanRequest | null; errors: Partial<Record<PlanField, string>> } {
+  const errors: Partial<Record<PlanField, string>> = {};
+  const readyBy = typedInstant(typed.readyDay, typed.readyTime, today, zone);
+  const clipOnAt = typedInstant(typed.clipDay, typed.clipTime, today, zone);
+  if (readyBy === undefined) errors.readyTime = noTime;
+  if (clipOnAt === undefined) errors.clipTime = noTime;
+  if (readyBy && Date.parse(readyBy) < now - 60_000) errors.readyTime = 'That time is over. Choose a later one.';
+  if (clipOnAt && Date.parse(clipOnAt) < now - 15 * 60_000) errors.clipTime = 'That time is over. Choose a later one.';
+  if (typed.spareId === '') errors.spareId = 'Choose the spare.';
+  const parsed = planSchema.safeParse({
+    spareId: typed.spareId,
+    targetVolts: typed.targetVolts,
+    toleranceMillivolts: typed.toleranceMillivolts,
+    meterId: typed.meterId === '' ? null : typed.meterId,
+    packCelsius: typed.packCelsius,
+    readyBy: readyBy ?? null,
+    clipOnAt: clipOnAt ?? null,
+    repairRef: typed.repairRef,
+    modulePosition: typed.modulePosition,
+  });
+  if (!parsed.success) {
+    for (const issue of parsed.error.issues) {
+      const field = String(issue.path[0]) as PlanField;
+      if (field in emptyPlan) errors[field] ??= issue.message;
+    }
+    return { request: null, errors };
+  }
+  return { request: Object.keys(errors).length > 0 ? null : parsed.data, errors };
+}
