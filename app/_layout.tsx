@@ -8,7 +8,7 @@ import { useZone } from '@/shared/client/workshop';
 import { FormatsProvider } from '@/shared/ui/format/formats';
 import { ToastProvider } from '@/shared/ui/primitives/toast';
 import { StartFailed } from '@/shared/ui/shell/start-failed';
-import { ThemeProvider } from '@/shared/ui/theme/theme';
+import { ThemeProvider, useTheme } from '@/shared/ui/theme/theme';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
@@ -40,6 +40,7 @@ const beginsOpen = open.test(globalThis.location?.pathname ?? '/');
 
 function Screens() {
   const { data: session, isError, refetch, isFetching } = useSession();
+  const { colors } = useTheme();
   const signedIn = Boolean(session);
   const waiting = session === undefined && !beginsOpen;
 
@@ -54,7 +55,14 @@ function Screens() {
   // Nothing is drawn before it is known who is here: a guard that changes its mind would lose the address.
   if (waiting) return isError ? <StartFailed busy={isFetching} onRetry={() => void refetch()} /> : null;
   return (
-    <Stack screenOptions={{ headerShown: false, animation: 'none', title: 'Bidewell' }}>
+    <Stack
+      screenOptions={{
+        headerShown: false,
+        animation: 'none',
+        title: 'Bidewell',
+        contentStyle: { backgroundColor: colors.ground },
+      }}
+    >
       <Stack.Screen name="index" />
       <Stack.Screen name="estimate" options={{ title: 'Quick estimate' }} />
       <Stack.Screen name="wall" options={{ title: 'Wall' }} />

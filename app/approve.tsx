@@ -7,7 +7,7 @@ import { useMember } from '@/shared/client/session';
 import { useApproveWall, useRefuseWall, useWallRequest } from '@/shared/client/walls';
 import { readQuantity } from '@/shared/contract/quantity';
 import { approveWallSchema, userCode } from '@/shared/contract/wall';
-import { FormStack , FieldPair } from '@/shared/ui/auth/form-stack';
+import { FormStack, FieldPair } from '@/shared/ui/auth/form-stack';
 import { ProblemLine } from '@/shared/ui/auth/problem-line';
 import { duration } from '@/shared/ui/format/duration';
 import { NBSP } from '@/shared/ui/format/marks';
@@ -45,6 +45,9 @@ export default function Approve() {
   }
   return <ApproveForm onBack={back} />;
 }
+
+/** '40 s', '3 min' */
+const agoWords = (s: number): string => (s < 120 ? `${Math.max(0, Math.round(s))}${NBSP}s` : duration(s, 'minute'));
 
 const numberIn = (text: string, unit: 'in' | 'm', max: number): number | null => {
   const reading = readQuantity(text, { name: '', unit, min: 0, aboveMin: true, max });
@@ -129,10 +132,7 @@ function ApproveForm({ onBack }: { onBack: () => void }) {
           error={code.error ?? (none ? 'No screen shows this code now.' : undefined)}
           verdict={
             found
-              ? {
-                  inside: true,
-                  text: `found, ${duration(Math.max(0, (now - Date.parse(found.askedAt)) / 1000), 'minute')} ago`,
-                }
+              ? { inside: true, text: `found, ${agoWords((now - Date.parse(found.askedAt)) / 1000)} ago` }
               : undefined
           }
         />

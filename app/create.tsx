@@ -59,7 +59,7 @@ export default function Create() {
             onPress={() => {
               setAsked(true);
               // Not sent before it is ticked, but every field is looked at.
-              void (agreed ? f.submit() : f.form.trigger());
+              void (agreed ? f.submit() : f.check());
             }}
           />
         </Foot>

@@ -18,6 +18,7 @@ import { SideRail } from '@/shared/ui/screen/side-rail';
 import { TabBar } from '@/shared/ui/screen/tab-bar';
 import { NoticePrompt } from '@/shared/ui/shell/notice-prompt';
 import { placeOf, railItems, tabItems, titles } from '@/shared/ui/shell/places';
+import { useTheme } from '@/shared/ui/theme/theme';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
@@ -26,6 +27,7 @@ export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 export default function WorkshopLayout() {
   const router = useRouter();
   const path = usePathname();
+  const { colors } = useTheme();
   const name = useSession().data?.person.name ?? '';
   const alerts = useOpenAlertCount();
   const seesWaits = useCan('waits:read');
@@ -56,6 +58,7 @@ export default function WorkshopLayout() {
             headerShown: false,
             animation: 'none',
             title: titles[route.name] ?? 'Bidewell',
+            contentStyle: { backgroundColor: colors.ground },
           })}
         />
       </ShellStrip.Provider>

@@ -33,6 +33,8 @@ export interface ContractForm<Values extends FieldValues> {
   form: UseFormReturn<Values, unknown, Values>;
   /** Checks and sends. */
   submit: () => Promise<void>;
+  /** Checks every field and goes to the first wrong one, without sending: something outside the form is missing. */
+  check: () => Promise<boolean>;
   busy: boolean;
   /** Why it was not taken, where no field is to blame. */
   problem: string | null;
@@ -72,6 +74,7 @@ export function useContractForm<Values extends FieldValues, Output>({
   const [error, setError] = useState<unknown>(null);
   const [problem, setProblem] = useState<string | null>(null);
   const [busy, setBusy] = useState(false);
+  const [tried, setTried] = useState(false);
   const form = useForm<Values, unknown, Values>({
     // The resolver's own types want the input's shape; people type text into numbers, which the schema reads.
     resolver: standardSchemaResolver(schema as never) as never,
@@ -120,14 +123,22 @@ export function useContractForm<Values extends FieldValues, Output>({
 
   return {
     form,
-    submit: () => submit(),
+    submit: () => {
+      setTried(true);
+      return submit();
+    },
+    check: () => {
+      setTried(true);
+      return form.trigger(undefined, { shouldFocus: true });
+    },
     busy,
     problem,
     error,
-    wrong: form.formState.isSubmitted ? countOf(form.formState.errors as FieldErrors) : 0,
+    wrong: tried ? countOf(form.formState.errors as FieldErrors) : 0,
     restored: kept !== null,
     clear: (next = initial) => {
       form.reset(next);
+      setTried(false);
       setError(null);
       setProblem(null);
       if (draft) writeDraft(personId, draft, null);

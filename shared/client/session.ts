@@ -47,13 +47,18 @@ export function useCan(capability: Capability): boolean {
   return useSession().data?.capabilities.includes(capability) ?? false;
 }
 
+/** Drops everything asked for but who is signed in and what the installation is. */
+const forgetOthers = (client: QueryClient): void =>
+  client.removeQueries({
+    predicate: ({ queryKey }) => queryKey[0] !== roots.session && queryKey[0] !== roots.frontDoor,
+  });
+
 function begin(client: QueryClient, session: SessionDto): void {
   const last = client.getQueryData(sessionQuery().queryKey);
   rememberSignedIn(true);
   endedStore.set(null);
   // Another person, or another workshop: nothing of the last one is shown for a moment.
-  if (last?.person.id !== session.person.id || last.workshop.id !== session.workshop.id)
-    client.removeQueries({ predicate: (query) => query.queryKey[0] !== roots.session });
+  if (last?.person.id !== session.person.id || last.workshop.id !== session.workshop.id) forgetOthers(client);
   client.setQueryData(sessionQuery().queryKey, session);
 }
 
@@ -104,7 +109,7 @@ function end(client: QueryClient): void {
   rememberSignedIn(false);
   endedStore.set(null);
   client.setQueryData(sessionQuery().queryKey, null);
-  client.removeQueries({ predicate: (query) => query.queryKey[0] !== roots.session });
+  forgetOthers(client);
 }
 
 export const useSignOut = () =>

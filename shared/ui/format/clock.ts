@@ -89,7 +89,7 @@ export function dayName(day: string, today: string): string {
 }
 
 /** Moves an estimated instant to the minutes that are told: to 5, within an hour of now to 1. */
-function told(instant: number, likely: number, now: number): number {
+export function told(instant: number, likely: number, now: number): number {
   const step = (likely - now >= 3_570_000 ? 5 : 1) * 60_000;
   return Math.round(instant / step) * step;
 }

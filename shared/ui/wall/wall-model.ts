@@ -1,6 +1,6 @@
 /** What the wall says of a charge, and which of its layouts holds. Pure: instants are epoch ms, sizes px of a 1920 px wide picture. */
 import type { ChargeCardDto } from '@/shared/contract/charge';
-import { clock } from '../format/clock';
+import { clock, readyBounds, told } from '../format/clock';
 import { EN_DASH, pointMarks, type LocaleMarks } from '../format/marks';
 import { dayOf } from '../format/zone';
 import { stages, type StageId, type StageMark } from '../stage/stages';
@@ -85,23 +85,25 @@ export function movedBy(card: WallCard, boardAt: number, now: number): number {
 export function timeOf(card: WallCard, { now, boardAt, zone, stale = false, marks = pointMarks }: WallClock): WallTime {
   const moved = movedBy(card, boardAt, now);
   const at = (instant: string) => Date.parse(instant) + moved;
+  const toldLikely = (likely: number) => told(likely, likely, now);
   const overdue = ms(card.overdueSince);
   const checkDue = ms(card.checkDueAt);
   if (overdue !== null) {
     const small =
       card.stage === 'check-due' || !card.ready
         ? 'check waiting'
-        : `over, ${stale ? 'then' : 'now'} ${clock(at(card.ready.likely), zone, marks)}`;
+        : `over, ${stale ? 'then' : 'now'} ${clock(toldLikely(at(card.ready.likely)), zone, marks)}`;
     return { ...waited(overdue, now), small };
   }
   if (card.stage === 'check-due') return { ...waited(checkDue ?? now, now), small: 'check waiting' };
   if (card.stage === 'ready') return { large: 'ready', small: 'to be fitted' };
   if (card.stage === 'stopped') return { large: clock(ms(card.stoppedAt) ?? now, zone, marks), small: 'stopped' };
-  const band = card.ready;
-  if (!band) return { large: EN_DASH, small: 'not known yet' };
+  if (!card.ready) return { large: EN_DASH, small: 'not known yet' };
+  const band = { p10: at(card.ready.early), p50: at(card.ready.likely), p90: at(card.ready.late) };
+  const likely = told(band.p50, band.p50, now);
   return {
-    large: clock(at(band.likely), zone, marks),
-    small: `${dayPrefix(at(band.likely), zone, now)}${clock(at(band.early), zone, marks)}${EN_DASH}${clock(at(band.late), zone, marks)}`,
+    large: clock(likely, zone, marks),
+    small: `${dayPrefix(likely, zone, now)}${readyBounds(band, zone, now, marks)}`,
   };
 }
 

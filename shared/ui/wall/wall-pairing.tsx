@@ -25,13 +25,13 @@ export interface WallPairingProps {
 
 /** Mean advance of the letters, em of Barlow Condensed 600; the two wide ones apart. */
 const widthOf = (letter: string): number =>
-  letter === 'W' ? 0.75 : letter === 'M' ? 0.67 : letter === '-' ? 0.36 : 0.52;
+  letter === 'W' ? 0.7 : letter === 'M' ? 0.6 : letter === '-' ? 0.32 : 0.46;
 const codeRoom = 1690;
 
 /** As large as the code's own letters let it be. */
 export function codeSize(code: string): number {
   const ems = [...code].reduce((sum, letter) => sum + widthOf(letter), 0);
-  return Math.min(400, Math.floor(codeRoom / ems));
+  return Math.min(450, Math.floor(codeRoom / ems));
 }
 
 /** A screen that is not paired yet: its code leads, a phone reads the rest. */

@@ -8,6 +8,8 @@ const widthShare = 16 / Math.hypot(16, 9);
 
 export interface Reach {
   name: string;
+  /** In a sentence: 'band'. */
+  short: string;
   /** Farthest reader, m. */
   metres: number;
 }
@@ -18,11 +20,11 @@ export function reachOf(diagonalInches: number): Reach[] {
   const of = (px: number) => (px * mmPerPx * distancePerCap) / 1000;
   const { time, repair, stage, glyph, meta } = wallScale.upTo6;
   return [
-    { name: 'Time', metres: of(time * capShare) },
-    { name: 'Stage sign', metres: of(glyph) },
-    { name: 'Repair', metres: of(repair * capShare) },
-    { name: 'Stage word', metres: of(stage * capShare) },
-    { name: 'Channel, band', metres: of(meta * capShare) },
+    { name: 'Time', short: 'time', metres: of(time * capShare) },
+    { name: 'Stage sign', short: 'stage sign', metres: of(glyph) },
+    { name: 'Repair', short: 'repair', metres: of(repair * capShare) },
+    { name: 'Stage word', short: 'stage word', metres: of(stage * capShare) },
+    { name: 'Channel, band', short: 'band', metres: of(meta * capShare) },
   ];
 }
 
@@ -32,10 +34,9 @@ export const metresNumber = (metres: number): string =>
 
 /** 'Stage word and band are for those who step closer.' */
 export function reachSentence(reach: readonly Reach[], distance: number): string {
-  const near = reach.filter(({ metres }) => metres < distance).map(({ name }) => name);
+  const near = reach.filter(({ metres }) => metres < distance).map(({ short }) => short);
   if (near.length === 0) return 'All of it is read from there.';
   if (near.length === reach.length) return 'Too far for this screen: nothing of it is read from there.';
-  const words = near.map((name, i) => (i === 0 ? name : name.toLowerCase()));
-  const list = words.length > 1 ? `${words.slice(0, -1).join(', ')} and ${words.at(-1)}` : words[0];
-  return `${list} ${words.length > 1 || list?.includes(',') ? 'are' : 'is'} for those who step closer.`;
+  const list = near.length > 1 ? `${near.slice(0, -1).join(', ')} and ${near.at(-1)}` : near[0]!;
+  return `${list.charAt(0).toUpperCase()}${list.slice(1)} ${near.length > 1 ? 'are' : 'is'} for those who step closer.`;
 }

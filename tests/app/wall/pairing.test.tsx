@@ -76,7 +76,7 @@ describe('how far a wall is read', () => {
   });
 
   it('says which parts are for those who step closer', () => {
-    expect(reachSentence(reachOf(55), 7)).toBe('Stage word and channel, band are for those who step closer.');
+    expect(reachSentence(reachOf(55), 7)).toBe('Stage word and band are for those who step closer.');
     expect(reachSentence(reachOf(55), 3)).toBe('All of it is read from there.');
     expect(reachSentence(reachOf(55), 20)).toBe('Too far for this screen: nothing of it is read from there.');
   });
