@@ -1,3 +1,4 @@
+import compression from 'compression';
 import express, { type Express } from 'express';
 import type { Deps } from './deps';
 import { metroProxy } from './middleware/metro-proxy';
@@ -28,6 +29,8 @@ export function createApp(deps: Deps): Express {
     next();
   });
   app.use(sameOrigin(config.publicUrl));
+  // A board of twenty charges is tens of kilobytes of JSON to a phone in a metal hall.
+  app.use('/api', compression());
   app.use('/api', express.json({ limit: '256kb', strict: false }));
 
   const router = express.Router();

@@ -5,6 +5,7 @@ import net from 'node:net';
 import os from 'node:os';
 import path from 'node:path';
 import Database from 'better-sqlite3';
+import { io } from 'socket.io-client';
 import request from 'supertest';
 import { DataSource, type MigrationInterface, type QueryRunner } from 'typeorm';
 import { build } from 'esbuild';
@@ -15,6 +16,7 @@ import { databaseFile } from '@/server/data-files';
 import { makeLog } from '@/server/middleware/request-log';
 import { migrate } from '@/server/migrate';
 import { migrations } from '@/server/migrations/all';
+import { makeLocalCertificate } from '@/server/cli/certificate';
 import { startServer, type RunningServer } from '@/server/start-server';
 import { cookiesOf } from '@/tests/support/cookies';
 
@@ -99,6 +101,35 @@ describe('the first start', () => {
     running.pop();
     fs.writeFileSync(path.join(folder, 'secret.key'), 'short');
     await expect(start(folder)).rejects.toThrow('damaged');
+  });
+});
+
+describe('over https', () => {
+  it('speaks it by itself, binds its cookies to the host, and takes sockets by them', async () => {
+    const { chain, key, issuer } = await makeLocalCertificate(['localhost', '127.0.0.1'], new Date());
+    const server = await start(newFolder(), { tls: { cert: chain, key } });
+    expect(server.address).toMatch(/^https:\/\/127\.0\.0\.1:/);
+    const created = await request(server.address).post('/api/workshops').ca(issuer).send(workshop);
+    expect(created.status).toBe(201);
+    const cookies = cookiesOf(created);
+    expect(Object.keys(cookies).sort()).toEqual([
+      '__Host-bidewell_access',
+      '__Host-bidewell_device',
+      '__Host-bidewell_refresh',
+    ]);
+    for (const { attributes } of Object.values(cookies)) expect(attributes).toContain('Secure');
+    const cookie = `__Host-bidewell_access=${cookies['__Host-bidewell_access']?.value}`;
+    const socket = io(server.address, {
+      ca: issuer,
+      transports: ['websocket'],
+      extraHeaders: { cookie, origin: server.address },
+      reconnection: false,
+    } as Parameters<typeof io>[1]);
+    await new Promise<void>((resolve, reject) => {
+      socket.on('connect', () => resolve());
+      socket.on('connect_error', reject);
+    });
+    socket.disconnect();
   });
 });
 

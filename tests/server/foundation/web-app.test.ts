@@ -105,6 +105,17 @@ describe('the web app’s files', () => {
   });
 });
 
+it('answers of the API that are large are sent compressed, small ones as they are', async () => {
+  const agent = await start();
+  const encoding = async (path: string) =>
+    (await server.agentFor('manager').get(path).set('Accept-Encoding', 'gzip')).headers['content-encoding'];
+  for (let i = 0; i < 12; i += 1)
+    await server.agentFor('manager').post('/api/meters', { name: `Meter ${i}`, offsetMillivolts: 0, checkedAt: null });
+  expect(await encoding('/api/meters')).toBe('gzip');
+  expect(await encoding('/api/front-door')).toBeUndefined();
+  expect((await agent.get('/api/front-door')).status).toBe(200);
+});
+
 describe('the page', () => {
   it.each(['/', '/wall', '/estimate', '/charges/abc', '/join'])('is there for the screen %s', async (address) => {
     const agent = await start();
