@@ -1,5 +1,6 @@
 /** One charge of the past: planned with the numbers that were known, run with the numbers that were true. */
 import type { ChannelParameters, Finish, PlanInput, PlanOption, Way } from '@/calc/plan-types';
+import { CAPACITY_RELATIVE_SD } from '@/calc/plan/default-spreads';
 import { isPossible, type Draft } from '@/calc/plan/draft';
 import { paralleledWay } from '@/calc/plan/paralleled-way';
 import { planModel } from '@/calc/plan/plan-model';
@@ -68,7 +69,7 @@ export function runPast(plan: PastPlan, wish: PastWish, noise: Noise): PastRun |
     module: { ...frozen.module, resistanceOhm: ohm === null ? null : ohm * (1 + 0.2 * noise.normal()) },
     spare: {
       ...frozen.spare,
-      capacityAh: wish.capacityAh * (1 + 0.02 * noise.normal()),
+      capacityAh: wish.capacityAh * (1 + CAPACITY_RELATIVE_SD.measured * noise.normal()),
       groupVolts: frozen.spare.groupVolts.map((volts) => volts + meterVolts),
     },
     channels: frozen.channels.map((channel) => ({

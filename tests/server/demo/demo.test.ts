@@ -38,7 +38,7 @@ beforeAll(async () => {
     const cookie = `bidewell_access=${cookiesOf(signedIn).bidewell_access!.value}`;
     agents[role] = makeAgent(server.app, () => cookie);
   }
-}, 120_000);
+}, 240_000);
 afterAll(async () => {
   await server.close();
   fs.rmSync(dataDir, { recursive: true, force: true });
@@ -246,7 +246,7 @@ describe('seeding', () => {
     expect(await stages()).toEqual(first);
     expect(await manager.count(Workshop)).toBe(1);
     await fresh.close();
-  }, 180_000);
+  }, 300_000);
 
   it('puts a machine without a place beside the harbour, and opens its day around the seeding', () => {
     expect(demoZone('UTC')).toBe('Europe/Amsterdam');
