@@ -7,5 +7,5 @@ await ensureInstalled();
 const chromium = await ensureChromium();
 await buildWhatIsStale();
 await runOrExit(process.execPath, ['--import', 'tsx', fromRoot('tests/bench/index.ts'), ...process.argv.slice(2)], {
-  BIDEWELL_CHROMIUM: chromium ?? '',
+  BIDEWELL_CHROMIUM: chromium ?? 'none',
 });

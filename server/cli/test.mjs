@@ -54,7 +54,7 @@ const chromium = await ensureChromium();
 await buildWhatIsStale();
 
 const parts = [await runProjects('unit', ['node', 'ui'], { CI: process.env.CI ?? '' })];
-parts.push(await runProjects('e2e', ['e2e'], { BIDEWELL_CHROMIUM: chromium ?? '' }));
+parts.push(await runProjects('e2e', ['e2e'], { BIDEWELL_CHROMIUM: chromium ?? 'none' }));
 
 if (!chromium) {
   const missing = fs.existsSync(fromRoot('tests/e2e'))
