@@ -5,6 +5,7 @@ import type { Browser } from 'playwright-core';
 import { fromRoot } from '@/server/cli/tools.mjs';
 import { launch } from '../support/launch';
 import { openBrowser, viewports, visit, type Visitor } from '../support/browser';
+import { pairAsWall, signInAs } from '../support/demo';
 
 /** What scripts may weigh before the first interaction, KiB gzip. */
 export const firstLoadBudgetKib = 350;
@@ -41,6 +42,14 @@ function modulesByFile(): Record<string, string[]> {
 
 const gzipSize = (content: Buffer) => zlib.gzipSync(content, { level: 9 }).length;
 
+const firstScreens = [
+  { address: '/', name: '/ (nobody signed in)', viewport: viewports.phone, as: null, arrivesAt: '/sign-in' },
+  { address: '/', name: '/ (technician)', viewport: viewports.phone, as: 'technician', arrivesAt: '/bench' },
+  { address: '/wall', name: '/wall (pairing)', viewport: viewports.wall, as: null, arrivesAt: '/wall' },
+  { address: '/wall', name: '/wall (paired)', viewport: viewports.wall, as: 'wall', arrivesAt: '/wall' },
+  { address: '/estimate', name: '/estimate', viewport: viewports.phone, as: null, arrivesAt: '/estimate' },
+] as const;
+
 async function load(visitor: Visitor, url: string, address: string, name: string): Promise<FirstLoad> {
   const { page } = visitor;
   const sizes = new Map<string, number>();
@@ -73,15 +82,6 @@ async function load(visitor: Visitor, url: string, address: string, name: string
   };
 }
 
-/** Signs in as a role of the demo workshop, in the visitor's own cookies. */
-async function signIn(visitor: Visitor, url: string, role: string): Promise<void> {
-  const answer = await visitor.context.request.post(`${url}/api/demo/sign-in`, {
-    data: { role },
-    headers: { origin: url },
-  });
-  if (!answer.ok()) throw new Error(`demo sign-in as ${role} answered ${answer.status()}: ${await answer.text()}`);
-}
-
 /**
  * Opens the first screens in Chromium against the built server with demo data, each with an empty cache, and adds up
  * the scripts they fetch before anybody touches them.
@@ -92,16 +92,16 @@ export async function measureFirstLoads(): Promise<FirstLoad[]> {
   try {
     browser = await openBrowser();
     const results: FirstLoad[] = [];
-    const plan = [
-      { address: '/', name: '/ (nobody signed in)', viewport: viewports.phone, role: null },
-      { address: '/', name: '/ (technician)', viewport: viewports.phone, role: 'technician' },
-      { address: '/wall', name: '/wall (pairing)', viewport: viewports.wall, role: null },
-      { address: '/estimate', name: '/estimate', viewport: viewports.phone, role: null },
-    ];
-    for (const { address, name, viewport, role } of plan) {
+    const approver = await visit(browser, server.url);
+    await signInAs(approver.context, server.url, 'foreman');
+    for (const { address, name, viewport, as, arrivesAt } of firstScreens) {
       const visitor = await visit(browser, server.url, { viewport });
-      if (role) await signIn(visitor, server.url, role);
-      results.push(await load(visitor, server.url, address, name));
+      if (as === 'technician') await signInAs(visitor.context, server.url, as);
+      if (as === 'wall') await pairAsWall(visitor.context, approver.context, server.url);
+      const result = await load(visitor, server.url, address, name);
+      const at = new URL(visitor.page.url()).pathname;
+      if (at !== arrivesAt) throw new Error(`${name} ended at ${at} instead of ${arrivesAt}`);
+      results.push(result);
       await visitor.close();
     }
     return results;

@@ -42,9 +42,9 @@ export function freePort(): Promise<number> {
 
 const pause = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms));
 
-/** Waits until /readyz answers 200; throws with the server's own words when it ends or takes longer than 60 s. */
+/** Waits until /readyz answers 200; throws with the server's own words when it ends or takes longer than 180 s. */
 async function untilReady(url: string, child: ChildProcess, output: () => string): Promise<void> {
-  const deadline = Date.now() + 60_000;
+  const deadline = Date.now() + 180_000;
   while (Date.now() < deadline) {
     if (child.exitCode !== null) throw new Error(`the server ended with ${child.exitCode}:\n${output()}`);
     const ready = await fetch(`${url}/readyz`).then(
@@ -54,7 +54,7 @@ async function untilReady(url: string, child: ChildProcess, output: () => string
     if (ready) return;
     await pause(100);
   }
-  throw new Error(`the server was not ready within 60 s:\n${output()}`);
+  throw new Error(`the server was not ready within 180 s:\n${output()}`);
 }
 
 /**
