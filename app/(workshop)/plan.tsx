@@ -22,6 +22,7 @@ import { PlanFields } from '@/shared/ui/plan/plan-fields';
 import { PlanRefused } from '@/shared/ui/plan/plan-refused';
 import { HowFarToTrustIt, WhatItTakes } from '@/shared/ui/plan/plan-trust';
 import { PlanWays } from '@/shared/ui/plan/plan-ways';
+import { optionTitle } from '@/shared/ui/plan/way-words';
 import { Button } from '@/shared/ui/primitives/button';
 import { CallOut, StandingLine } from '@/shared/ui/primitives/call-out';
 import { FactList } from '@/shared/ui/primitives/fact-list';
@@ -296,7 +297,12 @@ export default function Plan() {
           <View style={{ rowGap: 20 }}>
             {chosen && dto && dto.plan.refusals.length === 0 ? (
               <Suspense fallback={null}>
-                <PlanPicture option={chosen} clipOnAt={zero} targetVolts={settled?.targetVolts ?? 0} />
+                <PlanPicture
+                  heading={optionTitle(chosen)}
+                  option={chosen}
+                  clipOnAt={zero}
+                  targetVolts={settled?.targetVolts ?? 0}
+                />
               </Suspense>
             ) : null}
             <StandingLine />

@@ -5,19 +5,22 @@ import { ChargePicture } from '../charts/charge-picture';
 import { ChartFrame } from '../charts/chart-frame';
 import { PictureTable } from '../charts/picture-table';
 import { clock } from '../format/clock';
+import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
-import { clockTicks } from '../wait-ribbon/ticks';
-import { optionTitle } from './way-words';
+import { clockTicks, spanTicks } from '../wait-ribbon/ticks';
 
-/** Volts and amps of the chosen way against the clock. Loaded late: it brings the charts. */
+/** Volts and amps of a way against the clock, or against the time since clip-on. Loaded late: it brings the charts. */
 export default function PlanPicture({
+  heading,
   option,
   clipOnAt,
   targetVolts,
 }: {
-  option: PlanOption;
-  clipOnAt: number;
+  heading: string;
+  option: Pick<PlanOption, 'totalS' | 'segments' | 'trace'>;
+  /** Epoch ms; null where nobody has said when, as in the quick estimate. */
+  clipOnAt: number | null;
   targetVolts: number;
 }) {
   const { zone, marks } = useFormats();
@@ -26,12 +29,14 @@ export default function PlanPicture({
   const restBand = option.trace.flatMap(({ s, restLowVolts, restHighVolts }) =>
     restLowVolts === undefined || restHighVolts === undefined ? [] : [{ s, low: restLowVolts, high: restHighVolts }],
   );
-  const at = (s: number) => clock(clipOnAt + s * 1000, zone, marks);
+  const at = (s: number) =>
+    clipOnAt === null ? (s < 60 ? 'clip on' : duration(s)) : clock(clipOnAt + s * 1000, zone, marks);
+  const fewer = width - 40;
   return (
     <View onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))}>
       {width === 0 || option.trace.length < 2 ? null : (
         <ChartFrame
-          heading={optionTitle(option)}
+          heading={heading}
           note="Volts per group: line at the clips, dashes the rest voltage, mark the target. Below, amps. The comb is when it will be ready."
           picture={
             <ChargePicture
@@ -41,8 +46,12 @@ export default function PlanPicture({
               band={option.totalS}
               targetVolts={targetVolts}
               restBand={restBand.length > 1 ? restBand : undefined}
-              ticks={clockTicks({ zeroInstant: clipOnAt, fromS: 0, toS, width, zone, marks })}
-              twin={`${optionTitle(option)}: the groups come to ${volts(targetVolts, marks)} at rest, ready ${at(option.totalS.p50)}, between ${at(option.totalS.p10)} and ${at(option.totalS.p90)}.`}
+              ticks={
+                clipOnAt === null
+                  ? spanTicks({ toS, width: fewer })
+                  : clockTicks({ zeroInstant: clipOnAt, fromS: 0, toS, width: fewer, zone, marks })
+              }
+              twin={`${heading}: the groups come to ${volts(targetVolts, marks)} at rest, ready ${at(option.totalS.p50)}, between ${at(option.totalS.p10)} and ${at(option.totalS.p90)}.`}
             />
           }
           table={<PictureTable trace={option.trace} at={at} />}

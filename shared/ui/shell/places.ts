@@ -67,6 +67,8 @@ export const titles: Readonly<Record<string, string>> = {
   'spares/new': 'New spare',
   'spares/[id]': 'Spare',
   'spares/[id]/index': 'Spare',
+  'spares/[id]/edit': 'Edit a spare',
+  'spares/[id]/reading': 'Read a spare',
   'workshop/index': 'Workshop',
   'charges/[id]/index': 'Charge',
   'charges/[id]/checks': 'Before clipping on',

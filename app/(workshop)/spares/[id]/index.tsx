@@ -1,0 +1,245 @@
+import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
+import { useState } from 'react';
+import { View } from 'react-native';
+import { isProblem, sentenceOf } from '@/shared/client/api-problem';
+import { useBoard } from '@/shared/client/board';
+import { useDropCharge } from '@/shared/client/charges';
+import { useNow } from '@/shared/client/clock';
+import { useGate } from '@/shared/client/gate';
+import { useLink } from '@/shared/client/link';
+import { useMeters } from '@/shared/client/meters';
+import { useModuleTypes } from '@/shared/client/module-types';
+import { useChangeSpare, useQuarantineSpare, useReleaseSpare, useSpare, useSpareHistory } from '@/shared/client/spares';
+import type { SpareDto } from '@/shared/contract/spare';
+import { moment } from '@/shared/ui/format/clock';
+import { useFormats } from '@/shared/ui/format/formats';
+import { Button } from '@/shared/ui/primitives/button';
+import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
+import { Link } from '@/shared/ui/primitives/link';
+import { Rule } from '@/shared/ui/primitives/rule';
+import { useToast } from '@/shared/ui/primitives/toast';
+import { Txt } from '@/shared/ui/primitives/txt';
+import { Columns } from '@/shared/ui/screen/columns';
+import { HeaderBar } from '@/shared/ui/screen/header-bar';
+import { Screen } from '@/shared/ui/screen/screen';
+import { QuarantineSheet, type QuarantineInput } from '@/shared/ui/spare/quarantine-sheet';
+import { ReadingsHistory } from '@/shared/ui/spare/readings-history';
+import { SpareCapacity } from '@/shared/ui/spare/spare-capacity';
+import { SpareCharges } from '@/shared/ui/spare/spare-charges';
+import { SpareFoot, type SpareAct } from '@/shared/ui/spare/spare-foot';
+import { SpareHead } from '@/shared/ui/spare/spare-head';
+import { stockItems, whereWords } from '@/shared/ui/spare/spare-model';
+import { SpareStanding } from '@/shared/ui/spare/spare-standing';
+import { ruledOutWords } from '@/shared/ui/spare/spare-words';
+import { ErrorState } from '@/shared/ui/states/error-state';
+import { Loading } from '@/shared/ui/states/loading';
+
+export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
+
+/** One spare: what it rests at, what it holds, everything that was read of it. */
+export default function Spare() {
+  const { id } = useLocalSearchParams<{ id: string }>();
+  const router = useRouter();
+  const query = useSpare(id);
+  const back = () => (router.canGoBack() ? router.back() : router.replace('/spares' as Href));
+  if (query.data) return <Page spare={query.data} onBack={back} />;
+  const gone = isProblem(query.error) && query.error.status === 404;
+  return (
+    <Screen header={<HeaderBar title="Spare" onBack={back} />}>
+      {query.isError ? (
+        <ErrorState
+          failed={gone ? 'This spare is not here.' : 'The spare could not be read.'}
+          toDo={gone ? 'Look for its label in the list.' : sentenceOf(query.error)}
+          action={
+            gone
+              ? { title: 'All spares', onPress: () => router.replace('/spares' as Href) }
+              : { title: 'Try again', onPress: () => void query.refetch(), busy: query.isFetching }
+          }
+        />
+      ) : (
+        <Loading what="the spare" onRetry={() => void query.refetch()} />
+      )}
+    </Screen>
+  );
+}
+
+function Page({ spare, onBack }: { spare: SpareDto; onBack: () => void }) {
+  const router = useRouter();
+  const { marks } = useFormats();
+  const now = useNow(60_000);
+  const history = useSpareHistory(spare.id);
+  const board = useBoard();
+  const types = useModuleTypes();
+  const meters = useMeters();
+  const offline = useLink().state === 'down';
+  const gate = useGate('spare:release');
+  const [sheet, setSheet] = useState<'quarantine' | 'release' | null>(null);
+  const item = stockItems([spare], board.data?.charges)[0] ?? { spare, card: null };
+  const go = (path: string) => router.push(path as Href);
+  const act = (kind: SpareAct) => {
+    if (kind === 'reading') go(`/spares/${spare.id}/reading`);
+    else if (kind === 'charge') go(`/charges/${spare.charge?.id ?? ''}`);
+    else setSheet(kind);
+  };
+  const ratedAh = types.data?.find((type) => type.id === spare.moduleTypeId)?.ratedAh ?? null;
+  const people = gate.people.length > 0 ? ` (${gate.people.join(', ')})` : '';
+  const canPlan = spare.where === 'shelf' && ruledOutWords(spare, marks) === null;
+  return (
+    <Screen
+      header={
+        <HeaderBar
+          title={spare.label}
+          sub={`${spare.typeName} · ${whereWords(item)}`}
+          onBack={onBack}
+          tools={
+            spare.where === 'fitted' ? undefined : (
+              <Link title="Edit" align="right" onPress={() => go(`/spares/${spare.id}/edit`)} />
+            )
+          }
+        />
+      }
+      foot={
+        <SpareFoot
+          spare={spare}
+          offline={offline}
+          releasers={gate.may ? null : `${gate.roles}${people}`}
+          problem={null}
+          onAct={act}
+        />
+      }
+    >
+      <Columns
+        order={['facts', 'work', 'side']}
+        work={
+          <View style={{ rowGap: 18 }}>
+            <SpareStanding spare={spare} now={now} />
+            <SpareHead item={item} now={now} />
+            {canPlan ? (
+              <Button
+                look="line"
+                icon="plan"
+                title={`Plan a charge with ${spare.label}`}
+                onPress={() => go(`/plan?spare=${spare.id}`)}
+              />
+            ) : null}
+            {spare.charge && spare.where === 'charge' ? (
+              <Link title={`Open the charge ${spare.charge.title}`} onPress={() => act('charge')} />
+            ) : null}
+            <Rule gap={0} />
+            <SpareCapacity spare={spare} ratedAh={ratedAh} />
+            {spare.note ? <Txt tone="ink2">{spare.note}</Txt> : null}
+          </View>
+        }
+        side={
+          <View style={{ rowGap: 24 }}>
+            {history.data ? (
+              <>
+                <ReadingsHistory
+                  readings={history.data.readings}
+                  now={now}
+                  meterName={(id) => meters.data?.find((meter) => meter.id === id)?.name ?? null}
+                />
+                <SpareCharges charges={history.data.charges} now={now} onOpen={(id) => go(`/charges/${id}`)} />
+              </>
+            ) : history.isError ? (
+              <ErrorState
+                failed="The readings could not be read."
+                toDo={sentenceOf(history.error)}
+                action={{ title: 'Try again', onPress: () => void history.refetch(), busy: history.isFetching }}
+              />
+            ) : (
+              <Loading what="the readings" onRetry={() => void history.refetch()} />
+            )}
+          </View>
+        }
+      />
+      {sheet === 'quarantine' ? <Quarantine spare={spare} onClose={() => setSheet(null)} /> : null}
+      {sheet === 'release' ? <Release spare={spare} onClose={() => setSheet(null)} /> : null}
+    </Screen>
+  );
+}
+
+function Quarantine({ spare, onClose }: { spare: SpareDto; onClose: () => void }) {
+  const toast = useToast();
+  const { zone, marks } = useFormats();
+  const now = useNow(60_000);
+  const [quarantine, change, drop] = [useQuarantineSpare(), useChangeSpare(), useDropCharge()];
+  const [problem, setProblem] = useState<string | null>(null);
+  const card = useBoard().data?.charges.find((other) => other.id === spare.charge?.id);
+  const confirm = async ({ reason, condition, shelfPlace }: QuarantineInput) => {
+    setProblem(null);
+    try {
+      // A plan that waits for this spare falls away first: the server sets nothing aside that a charge holds.
+      if (spare.charge) {
+        if (!card) throw new Error('Its charge is not known here yet. Wait a moment and try again.');
+        await drop.mutateAsync({ id: card.id, rev: card.rev });
+      }
+      const aside = await quarantine.mutateAsync({ id: spare.id, reason });
+      await change
+        .mutateAsync({ ...inputOf(aside), condition: condition ?? aside.condition, shelfPlace })
+        .catch((error: unknown) =>
+          toast({ text: `${spare.label} is in quarantine. Its new place was not kept: ${sentenceOf(error)}` }),
+        );
+      onClose();
+    } catch (error) {
+      setProblem(sentenceOf(error));
+    }
+  };
+  const at = card ? ` at ${moment(Date.parse(card.clipOnAt), zone, now, marks)}` : '';
+  return (
+    <QuarantineSheet
+      spare={spare}
+      fact={
+        spare.charge
+          ? `It is ${spare.charge.stage} for ${spare.charge.title}${at}. That plan falls away.`
+          : 'No plan takes it until a foreman releases it.'
+      }
+      busy={quarantine.isPending || change.isPending || drop.isPending}
+      problem={problem}
+      onConfirm={(input) => void confirm(input)}
+      onClose={onClose}
+    />
+  );
+}
+
+const inputOf = (spare: SpareDto) => ({
+  id: spare.id,
+  rev: spare.rev,
+  label: spare.label,
+  moduleTypeId: spare.moduleTypeId,
+  shelfPlace: spare.shelfPlace,
+  capacityAh: spare.capacityAh,
+  healthPercent: spare.healthPercent,
+  capacitySource: spare.capacitySource,
+  condition: spare.condition,
+  note: spare.note,
+});
+
+function Release({ spare, onClose }: { spare: SpareDto; onClose: () => void }) {
+  const { marks } = useFormats();
+  const release = useReleaseSpare();
+  const still = ruledOutWords({ ...spare, quarantine: null }, marks);
+  return (
+    <ConfirmSheet
+      open
+      title={`Release ${spare.label}`}
+      fact={
+        still
+          ? `It leaves quarantine, but no plan takes it yet: ${still}. Change its condition or read it again.`
+          : 'It goes back on the shelf and plans may take it again.'
+      }
+      confirm="Release from quarantine"
+      safe="Keep it in quarantine"
+      busy={release.isPending}
+      onConfirm={() => release.mutate({ id: spare.id }, { onSuccess: onClose })}
+      onClose={onClose}
+    >
+      {spare.quarantine ? <Txt>{`Put in by ${spare.quarantine.by.name}: ${spare.quarantine.reason}.`}</Txt> : null}
+      {release.error ? (
+        <Txt tone="alarm" bold role="alert">
+          {sentenceOf(release.error)}
+        </Txt>
+      ) : null}
+    </ConfirmSheet>
+  );
+}

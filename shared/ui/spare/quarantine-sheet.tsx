@@ -1,0 +1,75 @@
+import { useState } from 'react';
+import type { SpareDto } from '@/shared/contract/spare';
+import { ChoiceList } from '../primitives/choice-row';
+import { ConfirmSheet } from '../primitives/confirm-sheet';
+import { Field } from '../primitives/field';
+import { Txt } from '../primitives/txt';
+
+export interface QuarantineInput {
+  reason: string;
+  /** What was seen, where it is a condition of the module; null leaves its condition as it is. */
+  condition: SpareDto['condition'] | null;
+  shelfPlace: string;
+}
+
+type Seen = 'swollen' | 'leaking' | 'dented' | 'water' | 'deep-discharged' | 'other';
+const seen: readonly { value: Seen; title: string }[] = [
+  { value: 'swollen', title: 'Swollen' },
+  { value: 'leaking', title: 'Leaking, or smells' },
+  { value: 'dented', title: 'Dented' },
+  { value: 'water', title: 'Water got in' },
+  { value: 'deep-discharged', title: 'A group under its floor' },
+  { value: 'other', title: 'Something else' },
+];
+
+/** Set a spare aside: what was seen, and where it goes. Nothing is preselected. */
+export function QuarantineSheet({
+  spare,
+  fact,
+  busy,
+  problem,
+  onConfirm,
+  onClose,
+}: {
+  spare: Pick<SpareDto, 'label' | 'shelfPlace'>;
+  /** What else falls away: its plan. */
+  fact: string;
+  busy: boolean;
+  problem: string | null;
+  onConfirm: (input: QuarantineInput) => void;
+  onClose: () => void;
+}) {
+  const [chosen, setChosen] = useState<Seen | null>(null);
+  const [words, setWords] = useState('');
+  const [place, setPlace] = useState(spare.shelfPlace ?? '');
+  const title = seen.find(({ value }) => value === chosen)?.title ?? '';
+  const reason = chosen === 'other' ? words.trim() : title;
+  return (
+    <ConfirmSheet
+      open
+      title={`Quarantine ${spare.label}`}
+      fact={fact}
+      confirm="Put in quarantine"
+      safe="Keep it on the shelf"
+      ready={reason !== ''}
+      why={chosen === 'other' ? 'Say what was seen first.' : 'Choose what was seen first.'}
+      busy={busy}
+      onConfirm={() =>
+        onConfirm({ reason, condition: chosen === null || chosen === 'other' ? null : chosen, shelfPlace: place })
+      }
+      onClose={onClose}
+    >
+      <Txt kind="label">What was seen</Txt>
+      <ChoiceList label="What was seen" value={chosen} onChange={setChosen} outset={14} choices={seen} />
+      {chosen === 'other' ? (
+        <Field label="In a few words" value={words} onChangeText={setWords} maxLength={300} autoFocus />
+      ) : null}
+      <Field label="Where it goes" kind="label" value={place} onChangeText={setPlace} maxLength={30} />
+      {problem ? (
+        <Txt tone="alarm" bold role="alert">
+          {problem}
+        </Txt>
+      ) : null}
+    </ConfirmSheet>
+  );
+}

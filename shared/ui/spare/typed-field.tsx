@@ -1,0 +1,44 @@
+import type { ReactNode, Ref } from 'react';
+import { useController, type FieldPath, type FieldValues, type UseFormReturn } from 'react-hook-form';
+import type { FieldHandle } from '../primitives/field';
+
+export interface TypedFieldProps {
+  value: string;
+  onChange: (value: string) => void;
+  onChangeText: (value: string) => void;
+  onBlur: () => void;
+  ref: Ref<FieldHandle>;
+  error: string | undefined;
+}
+
+/** One text of a form. What zod says of a choice nobody has made is told in the field's own words. */
+export function TypedField<Values extends FieldValues>({
+  form,
+  name,
+  missing,
+  children,
+}: {
+  form: UseFormReturn<Values, unknown, Values>;
+  name: FieldPath<Values>;
+  /** The sentence where it was left empty. */
+  missing?: string;
+  children: (field: TypedFieldProps) => ReactNode;
+}) {
+  const { field, fieldState } = useController({ control: form.control, name });
+  const message = fieldState.error?.message;
+  const value = (field.value ?? '') as string;
+  const unspoken = !message || /^Invalid (input|option)/.test(message) || (value === '' && missing !== undefined);
+  const error = fieldState.error ? (unspoken ? (missing ?? 'Choose or type this.') : message) : undefined;
+  return (
+    <>
+      {children({
+        value,
+        onChange: (next) => field.onChange(next),
+        onChangeText: (next) => field.onChange(next),
+        onBlur: field.onBlur,
+        ref: field.ref as Ref<FieldHandle>,
+        error,
+      })}
+    </>
+  );
+}
