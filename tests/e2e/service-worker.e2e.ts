@@ -1,0 +1,81 @@
+import type { Browser } from 'playwright-core';
+import { afterAll, beforeAll, expect, test } from 'vitest';
+import { describeInBrowser, openBrowser, visit, type Visitor } from '../support/browser';
+import { launch, type Launched } from '../support/launch';
+
+describeInBrowser('the service worker in Chromium', () => {
+  let server: Launched;
+  let browser: Browser;
+  let visitor: Visitor;
+
+  beforeAll(async () => {
+    server = await launch({ demo: false });
+    browser = await openBrowser();
+    visitor = await visit(browser, server.url, { context: { permissions: ['notifications'] } });
+    await visitor.page.goto(`${server.url}/estimate`);
+    await visitor.page.evaluate(async () => {
+      await navigator.serviceWorker.register('/sw.js');
+      await navigator.serviceWorker.ready;
+    });
+  });
+  afterAll(async () => {
+    await browser?.close();
+    await server?.stop();
+  });
+
+  test('shows a posted notice, and a second one of the same cause in its place', async () => {
+    const post = (title: string) =>
+      visitor.page.evaluate(async (text) => {
+        const registration = await navigator.serviceWorker.ready;
+        registration.active?.postMessage({
+          type: 'notify',
+          notice: { title: text, body: 'Check it', url: '/bench', tag: 'cause-1' },
+        });
+      }, title);
+    const shown = () =>
+      visitor.page.evaluate(async () => {
+        const registration = await navigator.serviceWorker.ready;
+        return (await registration.getNotifications()).map(({ title, tag, data }) => ({
+          title,
+          tag,
+          data: data as unknown,
+        }));
+      });
+    await post('Resting has ended');
+    await expect.poll(async () => (await shown()).map(({ title }) => title)).toEqual(['Resting has ended']);
+    await post('Resting has ended, 10 min late');
+    await expect
+      .poll(shown)
+      .toEqual([{ title: 'Resting has ended, 10 min late', tag: 'cause-1', data: { url: `${server.url}/bench` } }]);
+  });
+
+  test('keeps no file: with the server away nothing old is shown as if it were new', async () => {
+    expect(await visitor.page.evaluate(() => caches.keys())).toEqual([]);
+    await visitor.context.setOffline(true);
+    await expect(visitor.page.goto(`${server.url}/estimate`)).rejects.toThrow(/ERR_INTERNET_DISCONNECTED|ERR_FAILED/);
+    await visitor.context.setOffline(false);
+    await visitor.page.goto(`${server.url}/estimate`);
+  });
+
+  test('waits with a new version while a page of the old one is open', async () => {
+    const states = await visitor.page.evaluate(async () => {
+      // Another address of the same script counts as a new version.
+      const registration = await navigator.serviceWorker.register('/sw.js?next');
+      const next = registration.installing ?? registration.waiting;
+      if (next?.state === 'installing')
+        await new Promise((resolve) => next.addEventListener('statechange', resolve, { once: true }));
+      const before = { waiting: registration.waiting?.scriptURL, active: registration.active?.scriptURL };
+      const taken = new Promise((resolve) =>
+        navigator.serviceWorker.addEventListener('controllerchange', resolve, { once: true }),
+      );
+      registration.waiting?.postMessage({ type: 'take-over' });
+      await taken;
+      return { ...before, after: registration.active?.scriptURL };
+    });
+    expect(states).toEqual({
+      waiting: `${server.url}/sw.js?next`,
+      active: `${server.url}/sw.js`,
+      after: `${server.url}/sw.js?next`,
+    });
+  });
+});
