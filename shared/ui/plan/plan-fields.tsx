@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import { View } from 'react-native';
 import type { MeterDto } from '@/shared/contract/equipment';
 import type { SpareDto } from '@/shared/contract/spare';
@@ -5,6 +6,7 @@ import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
 import { DateTimeField } from '../primitives/date-time-field';
 import { Field } from '../primitives/field';
+import { Link } from '../primitives/link';
 import { Select } from '../primitives/select';
 import { makeStyles } from '../theme/make-styles';
 import type { PlanField, PlanTyped } from './plan-typed';
@@ -48,6 +50,12 @@ export function PlanFields({
     onChangeText: (text: string) => onChange({ [name]: text }),
     onBlur: () => onLeave(name),
   });
+  const [opened, setOpened] = useState(false);
+  const more =
+    opened ||
+    (['toleranceMillivolts', 'packCelsius', 'clipTime'] as const).some(
+      (name) => typed[name] !== '' || errors[name] !== undefined,
+    );
   return (
     <View style={styles.form}>
       <Select
@@ -65,38 +73,16 @@ export function PlanFields({
           <Field label="Pack rests at" kind="decimal" unit="V" required {...field('targetVolts')} />
         </View>
         <View style={styles.half}>
-          <Field
-            label="Tolerance"
-            kind="decimal"
-            unit="mV"
-            prefix={undefined}
-            placeholder={toleranceHint}
-            {...field('toleranceMillivolts')}
-          />
-        </View>
-      </View>
-      <View style={styles.row}>
-        <View style={styles.half}>
           <Select
-            label="Pack read with"
+            label="Read with"
             value={typed.meterId || 'none'}
+            error={errors.meterId}
             options={[
-              { value: 'none', label: 'meter not known' },
+              { value: 'none', label: 'not known' },
               ...(meters ?? []).map((meter) => ({ value: meter.id, label: meter.name })),
             ]}
             onChange={(meterId) => onChange({ meterId: meterId === 'none' ? '' : meterId })}
           />
-        </View>
-        <View style={styles.half}>
-          <Field label="Pack was at" kind="decimal" unit="°C" {...field('packCelsius')} />
-        </View>
-      </View>
-      <View style={styles.row}>
-        <View style={styles.half}>
-          <Field label="Repair" kind="label" {...field('repairRef')} />
-        </View>
-        <View style={styles.half}>
-          <Field label="Module position" kind="label" {...field('modulePosition')} />
         </View>
       </View>
       <DateTimeField
@@ -107,15 +93,48 @@ export function PlanFields({
         today={today}
         error={errors.readyTime}
       />
-      <DateTimeField
-        label="Clip on"
-        value={{ day: typed.clipDay || today, time: typed.clipTime }}
-        onChange={({ day, time }) => onChange({ clipDay: day, clipTime: time })}
-        onBlur={() => onLeave('clipTime')}
-        today={today}
-        hint="empty: now"
-        error={errors.clipTime}
-      />
+      <View style={styles.row}>
+        <View style={styles.half}>
+          <Field label="Repair" kind="label" maxLength={30} {...field('repairRef')} />
+        </View>
+        <View style={styles.half}>
+          <Field label="Module" kind="label" maxLength={30} {...field('modulePosition')} />
+        </View>
+      </View>
+      {more ? (
+        <>
+          <DateTimeField
+            label="Clip on"
+            value={{ day: typed.clipDay || today, time: typed.clipTime }}
+            onChange={({ day, time }) => onChange({ clipDay: day, clipTime: time })}
+            onBlur={() => onLeave('clipTime')}
+            today={today}
+            hint="empty: now"
+            error={errors.clipTime}
+          />
+          <View style={styles.row}>
+            <View style={styles.half}>
+              <Field
+                label="Tolerance"
+                kind="decimal"
+                unit="mV"
+                placeholder={toleranceHint}
+                {...field('toleranceMillivolts')}
+              />
+            </View>
+            <View style={styles.half}>
+              <Field label="Pack was at" kind="decimal" unit="°C" {...field('packCelsius')} />
+            </View>
+          </View>
+        </>
+      ) : (
+        <Link
+          kind="small"
+          title="more: clip on later, tolerance, temperature"
+          onPress={() => setOpened(true)}
+          style={styles.more}
+        />
+      )}
     </View>
   );
 }
@@ -124,4 +143,5 @@ const useStyles = makeStyles(() => ({
   form: { rowGap: 14 },
   row: { flexDirection: 'row', columnGap: 12 },
   half: { flex: 1, minWidth: 0 },
+  more: { marginVertical: -10, alignSelf: 'flex-start' },
 }));

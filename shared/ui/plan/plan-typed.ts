@@ -35,6 +35,10 @@ export const emptyPlan: PlanTyped = {
   clipTime: '',
 };
 
+/** The typed field that a path of the request belongs to. */
+export const fieldOf = (path: string): PlanField =>
+  path === 'readyBy' ? 'readyTime' : path === 'clipOnAt' ? 'clipTime' : (path as PlanField);
+
 const noTime = 'This is no time. Type it like 18:15.';
 
 /** The instant of a day and a typed time, ISO; null where no time is typed; undefined where it is none. */

@@ -1,9 +1,12 @@
 import { useState } from 'react';
 import { View } from 'react-native';
+import type { PlanOption, RuledOutWay } from '@/calc/plan-types';
 import type { PlanDto } from '@/shared/contract/plan';
 import { clock, moment } from '../format/clock';
 import { useFormats } from '../format/formats';
+import { Button } from '../primitives/button';
 import { ChoiceList } from '../primitives/choice-row';
+import { Link } from '../primitives/link';
 import { Txt } from '../primitives/txt';
 import { useBreakpoint } from '../theme/use-breakpoint';
 import { clockTicks } from '../wait-ribbon/ticks';
@@ -17,6 +20,14 @@ export function sharedAxisS(plan: PlanDto['plan']): number {
   if (ends.length === 0) return 4 * 3600;
   const middle = ends[Math.min(ends.length - 1, Math.ceil(ends.length * 0.7))] ?? 4 * 3600;
   return Math.min(ends.at(-1) ?? middle, middle * 1.25) * 1.02;
+}
+
+/** The first ways with those that carry a mark and the chosen one: what a decision needs. The order stays. */
+export function shownOptions(options: readonly PlanOption[], most: number, chosen: string | null): PlanOption[] {
+  if (options.length <= most + 1) return [...options];
+  return options.filter(
+    (option, index) => index < most || option.id === chosen || option.soonest || option.soonestBusbarsStay,
+  );
 }
 
 /** All ways, soonest first, on one axis; what is ruled out stands under them with its reason. */
@@ -43,6 +54,9 @@ export function PlanWays({
   const zero = Date.parse(dto.clipOnAt);
   const inner = Math.max(0, width - 4);
   const axisWidth = wide ? Math.round(inner * 0.5) : inner;
+  const [all, setAll] = useState(false);
+  const shown = all ? plan.options : shownOptions(plan.options, wide ? 5 : 3, chosen);
+  const hidden = plan.options.length - shown.length;
   return (
     <View>
       <View style={{ flexDirection: 'row', alignItems: 'baseline', justifyContent: 'space-between', columnGap: 12 }}>
@@ -59,7 +73,7 @@ export function PlanWays({
               value={chosen}
               onChange={onChoose}
               outset={14}
-              choices={plan.options.map((option) => ({
+              choices={shown.map((option) => ({
                 value: option.id,
                 title: wayLabel(option, wished),
                 children: (
@@ -85,23 +99,56 @@ export function PlanWays({
           </>
         )}
       </View>
+      {hidden > 0 ? (
+        <Button
+          look="line"
+          size="small"
+          style={{ marginTop: 8 }}
+          title={hidden === 1 ? '1 more way' : `${hidden} more ways`}
+          onPress={() => setAll(true)}
+        />
+      ) : null}
       <RuledOut plan={plan} />
     </View>
   );
 }
 
+/** What is ruled out, with its reason; ways that share a reason stand together. */
 function RuledOut({ plan }: { plan: PlanDto['plan'] }) {
-  if (plan.ruledOut.length === 0) return null;
+  const [open, setOpen] = useState(false);
+  const reasons = [...new Set(plan.ruledOut.map(({ reason }) => reason))];
+  if (reasons.length === 0) return null;
+  const shown = open || reasons.length <= 3 ? reasons : reasons.slice(0, 2);
   return (
-    <View style={{ rowGap: 4, marginTop: 10 }}>
-      {plan.ruledOut.map((way, index) => (
-        <Txt key={`${way.way} ${way.finish} ${way.channelId ?? ''} ${index}`} kind="small" tone="ink2">
-          <Txt kind="small" style={{ textDecorationLine: 'line-through' }}>
-            {`${wayNames[way.way]}${way.way === 'resistor' ? '' : `, ${finishNames[way.finish]}`}${way.channelName ? `, ${way.channelName}` : ''}`}
+    <View style={{ rowGap: 6, marginTop: 12 }}>
+      {shown.map((reason) => (
+        <Txt key={reason} kind="small" tone="ink2">
+          <Txt kind="small" tone="ink2" style={{ textDecorationLine: 'line-through' }}>
+            {ruledOutWays(plan.ruledOut.filter((way) => way.reason === reason))}
           </Txt>
-          {`: ${way.reason}`}
+          {`  ${reason}`}
         </Txt>
       ))}
+      {shown.length < reasons.length ? (
+        <Link
+          kind="small"
+          tight
+          title={`${reasons.length - shown.length} more that are ruled out`}
+          onPress={() => setOpen(true)}
+        />
+      ) : null}
     </View>
   );
+}
+
+/** 'Terminals, on the mark, A1, A2' */
+export function ruledOutWays(ways: readonly RuledOutWay[]): string {
+  const parts = new Map<string, Set<string>>();
+  for (const { way, finish, channelName } of ways) {
+    const name = way === 'resistor' ? wayNames.resistor : `${wayNames[way]}, ${finishNames[finish]}`;
+    const channels = parts.get(name) ?? new Set();
+    if (channelName) channels.add(channelName);
+    parts.set(name, channels);
+  }
+  return [...parts].map(([name, channels]) => [name, ...channels].join(', ')).join('; ');
 }

@@ -26,7 +26,7 @@ import { QuarantineSheet, type QuarantineInput } from '@/shared/ui/spare/quarant
 import { ReadingsHistory } from '@/shared/ui/spare/readings-history';
 import { SpareCapacity } from '@/shared/ui/spare/spare-capacity';
 import { SpareCharges } from '@/shared/ui/spare/spare-charges';
-import { SpareFoot, type SpareAct } from '@/shared/ui/spare/spare-foot';
+import { blockedBecause, SpareFoot, type SpareAct } from '@/shared/ui/spare/spare-foot';
 import { SpareHead } from '@/shared/ui/spare/spare-head';
 import { stockItems, whereWords } from '@/shared/ui/spare/spare-model';
 import { SpareStanding } from '@/shared/ui/spare/spare-standing';
@@ -73,7 +73,10 @@ function Page({ spare, onBack }: { spare: SpareDto; onBack: () => void }) {
   const meters = useMeters();
   const offline = useLink().state === 'down';
   const gate = useGate('spare:release');
-  const [sheet, setSheet] = useState<'quarantine' | 'release' | null>(null);
+  const asked = useLocalSearchParams<{ quarantine?: string }>().quarantine === '1';
+  const [sheet, setSheet] = useState<'quarantine' | 'release' | null>(
+    asked && spare.where !== 'quarantine' && blockedBecause(spare) === null ? 'quarantine' : null,
+  );
   const item = stockItems([spare], board.data?.charges)[0] ?? { spare, card: null };
   const go = (path: string) => router.push(path as Href);
   const act = (kind: SpareAct) => {
