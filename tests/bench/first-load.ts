@@ -95,7 +95,8 @@ export async function measureFirstLoads(): Promise<FirstLoad[]> {
     const approver = await visit(browser, server.url);
     await signInAs(approver.context, server.url, 'foreman');
     for (const { address, name, viewport, as, arrivesAt } of firstScreens) {
-      const visitor = await visit(browser, server.url, { viewport });
+      // As a browser comes: with motion, whose part loads by itself where something moves.
+      const visitor = await visit(browser, server.url, { viewport, context: { reducedMotion: 'no-preference' } });
       if (as === 'technician') await signInAs(visitor.context, server.url, as);
       if (as === 'wall') await pairAsWall(visitor.context, approver.context, server.url);
       const result = await load(visitor, server.url, address, name);
