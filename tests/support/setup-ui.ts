@@ -16,4 +16,8 @@ window.matchMedia ??= (query: string): MediaQueryList => ({
   dispatchEvent: () => false,
 });
 
+// jsdom counts a frame's time from another zero than performance.now, and Reanimated compares the two.
+window.requestAnimationFrame = (callback) => Number(setTimeout(() => callback(performance.now()), 16));
+window.cancelAnimationFrame = (id) => clearTimeout(id);
+
 afterEach(() => cleanup());
