@@ -68,6 +68,9 @@ function ApproveForm({ onBack }: { onBack: () => void }) {
   const f = useContractForm({
     schema: approveWallSchema,
     initial: { userCode: opened, name: '', diagonalInches: '', distanceMetres: '' },
+    draft: 'approve',
+    // The code in the address counts, not one that was typed for another screen.
+    secret: ['userCode'],
     send: async (output) => {
       await approve.mutateAsync(output);
       done(`${output.name} shows the board now.`);

@@ -52,7 +52,7 @@ export default function SignIn() {
   };
 
   return (
-    <AuthPage>
+    <AuthPage low={Boolean(ended ?? frontDoor.data?.demo)}>
       <SignInForm
         notice={ended ? endedSentence(ended) : null}
         email={email}

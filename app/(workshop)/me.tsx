@@ -35,6 +35,7 @@ function NameForm({ name }: { name: string }) {
   const f = useContractForm({
     schema: changeMeSchema,
     initial: { name },
+    draft: 'me',
     send: async (output) => {
       await change.mutateAsync({ name: output.name });
       toast({ text: 'Your name is changed.' });

@@ -6,7 +6,7 @@ import { useBreakpoint } from '../theme/use-breakpoint';
 import { SignInPicture } from './sign-in-picture';
 
 /** The page of the sign-in: the picture above the form on a phone, at its left on a desk. */
-export function AuthPage({ strip, children }: { strip?: ReactNode; children: ReactNode }) {
+export function AuthPage({ low = false, children }: { low?: boolean; children: ReactNode }) {
   const styles = useStyles();
   const wide = useBreakpoint() === 'wide';
   const words = (
@@ -22,7 +22,6 @@ export function AuthPage({ strip, children }: { strip?: ReactNode; children: Rea
   );
   return (
     <View role="main" style={styles.page}>
-      {strip}
       {wide ? (
         <View style={styles.beside}>
           <View style={styles.left}>
@@ -34,7 +33,7 @@ export function AuthPage({ strip, children }: { strip?: ReactNode; children: Rea
         </View>
       ) : (
         <ScrollView style={styles.scroll} keyboardShouldPersistTaps="handled">
-          <SignInPicture />
+          <SignInPicture low={low} />
           <View style={[styles.column, styles.under]}>{words}</View>
         </ScrollView>
       )}

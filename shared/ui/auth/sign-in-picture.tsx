@@ -10,12 +10,21 @@ const vessels = [
   [298, 206],
 ] as const;
 
+/** What `low` leaves away at the top, px: room for the demo's doors above the fold of a phone. */
+const cut = 110;
+
 /** The picture of the job over the sign-in: a module's groups against the notch. Decoration, so silent. */
-export function SignInPicture({ height = 330 }: { height?: number }) {
+export function SignInPicture({ height = 330, low = false }: { height?: number; low?: boolean }) {
   const { colors } = useTheme();
   return (
     <View style={styles.box} aria-hidden>
-      <Svg width="100%" height={height} viewBox="0 0 390 330" preserveAspectRatio="xMidYMin meet" fill="none">
+      <Svg
+        width="100%"
+        height={low ? height - cut : height}
+        viewBox={low ? `0 ${cut} 390 ${330 - cut}` : '0 0 390 330'}
+        preserveAspectRatio="xMidYMin meet"
+        fill="none"
+      >
         {vessels.map(([x, level]) => (
           <G key={x}>
             <Path d={`M${x} -400H${x + 52}V300H${x}z`} fill={colors.well} />

@@ -64,7 +64,7 @@ export function DeviceSettings(props: DeviceSettingsProps) {
               onPress={() => props.onSound(sound === 'off')}
             />
             <Button
-              title="Play the ready sound"
+              title="Play a sound"
               look="line"
               size="small"
               grow
