@@ -55,8 +55,15 @@ export const railItems = ({ alerts, seesWaits }: { alerts: number; seesWaits: bo
   { key: 'workshop', title: 'Workshop', icon: 'workshop', href: '/workshop' },
 ];
 
-/** Titles of the browser's tab, by route. */
-export const titles: Readonly<Record<string, string>> = {
+/** Titles of the browser's tab, by the route's file without its group. */
+const titles: Readonly<Record<string, string>> = {
+  'sign-in': 'Sign in',
+  create: 'Create a workshop',
+  join: 'Join a workshop',
+  estimate: 'Quick estimate',
+  wall: 'Wall',
+  approve: 'Approve a wall',
+  '+not-found': 'Not here',
   bench: 'Bench',
   plan: 'Plan a charge',
   more: 'More',
@@ -70,9 +77,23 @@ export const titles: Readonly<Record<string, string>> = {
   'spares/[id]/edit': 'Edit a spare',
   'spares/[id]/reading': 'Read a spare',
   'workshop/index': 'Workshop',
+  'workshop/limits': 'Limits',
+  'workshop/hours': 'Name and hours',
+  'workshop/people/[id]': 'Person',
+  'workshop/chargers/[id]': 'Charger',
+  'workshop/module-types/[id]': 'Module type',
+  'workshop/meters/[id]': 'Meter',
+  'workshop/resistors/[id]': 'Levelling resistor',
   'charges/[id]/index': 'Charge',
   'charges/[id]/checks': 'Before clipping on',
   'charges/[id]/log': 'Log a reading',
   'charges/[id]/check': 'Check after rest',
   'charges/[id]/label': 'Label',
 };
+
+/** The title of the browser's tab. @param segments the route, as the router names it: '(workshop)', 'charges', '[id]' */
+export function titleOf(segments: readonly string[]): string {
+  const route = segments.filter((segment) => !segment.startsWith('(')).join('/');
+  const title = titles[route] ?? titles[`${route}/index`];
+  return title ? `${title} · Bidewell` : 'Bidewell';
+}

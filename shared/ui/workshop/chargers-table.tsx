@@ -1,0 +1,112 @@
+import { View } from 'react-native';
+import type { ChannelDto, ChargerDto, MeterDto } from '@/shared/contract/equipment';
+import { useFormats } from '../format/formats';
+import { plannedAmps, clipVolts } from '../format/quantities';
+import { Link } from '../primitives/link';
+import { Table } from '../primitives/table';
+import { Txt } from '../primitives/txt';
+import { StageTag } from '../stage/stage-tag';
+import { stages, type StageMark } from '../stage/stages';
+import { meterChecked } from './meter-age';
+
+type Row = ChannelDto & { charger: ChargerDto };
+
+/** Every channel of the workshop with what it gives, its charger's meter, and who holds it now. */
+export function ChargersTable({
+  chargers,
+  meters,
+  now,
+  mayChange,
+  onEdit,
+}: {
+  chargers: readonly ChargerDto[];
+  meters: readonly MeterDto[];
+  now: number;
+  mayChange: boolean;
+  onEdit: (charger: ChargerDto) => void;
+}) {
+  const { zone, marks } = useFormats();
+  const rows: Row[] = chargers
+    .filter((charger) => !charger.retired)
+    .flatMap((charger) => charger.channels.map((channel) => ({ ...channel, charger })))
+    .sort((a, b) => a.name.localeCompare(b.name));
+  const meterOf = (charger: ChargerDto) => meters.find((meter) => meter.id === charger.meterId) ?? null;
+  return (
+    <Table
+      label="Chargers and channels"
+      rows={rows}
+      rowKey={(row) => row.id}
+      columns={[
+        { key: 'name', title: 'Channel', phone: 'name', cell: (row) => <Txt kind="numS">{row.name}</Txt> },
+        {
+          key: 'amps',
+          title: 'Current',
+          numeric: true,
+          phone: 'detail',
+          cell: (row) => plannedAmps(row.maxAmps, marks),
+        },
+        { key: 'volts', title: 'Up to', numeric: true, phone: 'detail', cell: (row) => clipVolts(row.maxVolts, marks) },
+        {
+          key: 'direction',
+          title: 'Direction',
+          phone: 'none',
+          cell: (row) => (row.canDischarge ? 'up and down' : 'up'),
+        },
+        {
+          key: 'senses',
+          title: 'Senses',
+          phone: 'none',
+          share: 1.3,
+          cell: (row) => (row.senses === 'module' ? 'at the module' : 'its own terminals'),
+        },
+        {
+          key: 'checked',
+          title: 'Meter checked',
+          phone: 'none',
+          share: 1.2,
+          cell: (row) => meterChecked(meterOf(row.charger), zone, now),
+        },
+        {
+          key: 'now',
+          title: 'Now',
+          phone: 'detail',
+          share: 1.8,
+          cell: (row) =>
+            row.heldBy ? (
+              row.heldBy.stage in stages ? (
+                <StageTag
+                  stage={row.heldBy.stage as StageMark}
+                  text={`${stages[row.heldBy.stage as StageMark].word}, ${row.heldBy.title}`}
+                />
+              ) : (
+                row.heldBy.title
+              )
+            ) : (
+              <Txt tone="ink2">free</Txt>
+            ),
+        },
+        ...(mayChange
+          ? [
+              {
+                key: 'edit',
+                title: 'Change',
+                quietTitle: true,
+                phone: 'value' as const,
+                width: 48,
+                cell: (row: Row) => (
+                  <View>
+                    <Link
+                      tight
+                      title="edit"
+                      label={`Edit ${row.charger.name} with channel ${row.name}`}
+                      onPress={() => onEdit(row.charger)}
+                    />
+                  </View>
+                ),
+              },
+            ]
+          : []),
+      ]}
+    />
+  );
+}

@@ -1,0 +1,16 @@
+/** The parts of the workshop's settings, in their order. */
+export const sections = [
+  { key: 'people', title: 'People', meaning: 'Roles, invitations, links for a new password' },
+  { key: 'chargers', title: 'Chargers', meaning: 'Channels, what they give, who holds them now' },
+  { key: 'module-types', title: 'Module types', meaning: 'Chemistry, limits of the maker, resistance' },
+  { key: 'meters', title: 'Meters', meaning: 'Offset and last cross-check' },
+  { key: 'resistors', title: 'Levelling resistors', meaning: 'For pre-levelling and neighbours' },
+  { key: 'limits', title: 'Limits', meaning: 'Tolerance, rest, look-ins, inrush' },
+  { key: 'hours', title: 'Name and hours', meaning: 'Name, time zone, working hours' },
+  { key: 'walls', title: 'Walls', meaning: 'Screens that show the board' },
+] as const;
+
+export type SectionKey = (typeof sections)[number]['key'];
+
+export const isSection = (key: string | undefined): key is SectionKey =>
+  sections.some((section) => section.key === key);

@@ -1,0 +1,88 @@
+import type { WorkshopDto } from '@/shared/contract/workshop';
+import type { LocaleMarks } from '../format/marks';
+import { typedNumber } from './numbers-typed';
+
+/** The limits of the workshop as typed. */
+export interface LimitTexts {
+  toleranceMillivolts: string;
+  minRestMinutes: string;
+  lookInMinutes: string;
+  inrushLimitC: string;
+  lagLimitMillivolts: string;
+  baseRev: number;
+}
+export type LimitKey = Exclude<keyof LimitTexts, 'baseRev'>;
+
+export const limitFields: readonly { key: LimitKey; name: string; unit: string; whole?: boolean; meaning: string }[] = [
+  {
+    key: 'toleranceMillivolts',
+    name: 'Tolerance',
+    unit: 'mV',
+    meaning: 'a group may rest this far off its target, to both sides',
+  },
+  {
+    key: 'minRestMinutes',
+    name: 'Rest at least',
+    unit: 'min',
+    whole: true,
+    meaning: 'between the end of current and the check',
+  },
+  {
+    key: 'lookInMinutes',
+    name: 'Look-in every',
+    unit: 'min',
+    whole: true,
+    meaning: 'while current flows; later it alarms',
+  },
+  {
+    key: 'inrushLimitC',
+    name: 'Inrush limit',
+    unit: 'C',
+    meaning: 'joining groups in parallel, times the capacity in an hour',
+  },
+  { key: 'lagLimitMillivolts', name: 'Lag limit', unit: 'mV', meaning: 'a group this far behind the others is odd' },
+];
+export const limitNames = Object.fromEntries(limitFields.map(({ key, name }) => [key, name])) as Record<
+  LimitKey,
+  string
+>;
+
+export const limitTexts = (workshop: WorkshopDto, marks: LocaleMarks): LimitTexts => ({
+  ...(Object.fromEntries(limitFields.map(({ key }) => [key, typedNumber(workshop[key], 0, marks)])) as Record<
+    LimitKey,
+    string
+  >),
+  baseRev: workshop.rev,
+});
+
+export interface HourTexts {
+  name: string;
+  zone: string;
+  /** Monday first; null: closed. */
+  workingHours: ({ from: string; to: string } | null)[];
+  baseRev: number;
+}
+
+export const hourTexts = (workshop: WorkshopDto): HourTexts => ({
+  name: workshop.name,
+  zone: workshop.zone,
+  workingHours: workshop.workingHours,
+  baseRev: workshop.rev,
+});
+
+export const weekDays = ['Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday', 'Saturday', 'Sunday'] as const;
+
+export const dayWords = (day: { from: string; to: string } | null | undefined): string =>
+  day ? `${day.from}–${day.to}` : 'closed';
+
+/** Name, zone and each day in words: for the table of what differs. */
+export const hourNames: Readonly<Record<string, string>> = {
+  name: 'Name',
+  zone: 'Its clock',
+  ...Object.fromEntries(weekDays.map((day) => [day, day])),
+};
+export const hourWords = (texts: HourTexts): Record<string, string> => ({
+  name: texts.name,
+  zone: texts.zone,
+  ...Object.fromEntries(weekDays.map((day, i) => [day, dayWords(texts.workingHours[i])])),
+});
