@@ -1,4 +1,4 @@
-import { Stack } from 'expo-router';
+import { Stack, useSegments } from 'expo-router';
 import { useEffect } from 'react';
 import { ClientProvider } from '@/shared/client/client-provider';
 import { usePreferences } from '@/shared/client/preferences';
@@ -7,7 +7,9 @@ import { returnTo } from '@/shared/client/session-state';
 import { useZone } from '@/shared/client/workshop';
 import { FormatsProvider } from '@/shared/ui/format/formats';
 import { ToastProvider } from '@/shared/ui/primitives/toast';
+import { titleOf } from '@/shared/ui/shell/places';
 import { StartFailed } from '@/shared/ui/shell/start-failed';
+import { usePageTitle } from '@/shared/ui/shell/use-page-title';
 import { ThemeProvider, useTheme } from '@/shared/ui/theme/theme';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
@@ -41,6 +43,7 @@ const beginsOpen = open.test(globalThis.location?.pathname ?? '/');
 function Screens() {
   const { data: session, isError, refetch, isFetching } = useSession();
   const { colors } = useTheme();
+  usePageTitle(titleOf(useSegments()));
   const signedIn = Boolean(session);
   const waiting = session === undefined && !beginsOpen;
 
@@ -59,21 +62,20 @@ function Screens() {
       screenOptions={{
         headerShown: false,
         animation: 'none',
-        title: 'Bidewell',
         contentStyle: { backgroundColor: colors.ground },
       }}
     >
       <Stack.Screen name="index" />
-      <Stack.Screen name="estimate" options={{ title: 'Quick estimate' }} />
-      <Stack.Screen name="wall" options={{ title: 'Wall' }} />
-      <Stack.Screen name="join" options={{ title: 'Join' }} />
+      <Stack.Screen name="estimate" />
+      <Stack.Screen name="wall" />
+      <Stack.Screen name="join" />
       <Stack.Protected guard={!signedIn}>
-        <Stack.Screen name="sign-in" options={{ title: 'Sign in' }} />
-        <Stack.Screen name="create" options={{ title: 'Create a workshop' }} />
+        <Stack.Screen name="sign-in" />
+        <Stack.Screen name="create" />
       </Stack.Protected>
       <Stack.Protected guard={signedIn}>
         <Stack.Screen name="(workshop)" />
-        <Stack.Screen name="approve" options={{ title: 'Approve a wall' }} />
+        <Stack.Screen name="approve" />
       </Stack.Protected>
     </Stack>
   );

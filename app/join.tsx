@@ -115,13 +115,17 @@ interface FormProps {
 const roleWords = { technician: 'Technician', foreman: 'Foreman', manager: 'Manager' } as const;
 
 function JoinForm({ token, link, until }: FormProps) {
+  const router = useRouter();
   const join = useJoin();
   const f = useContractForm({
     schema: joinSchema,
     initial: { token, name: '', password: '' },
     draft: 'join',
     secret: ['password', 'token'],
-    send: (output) => join.mutateAsync(output),
+    send: async (output) => {
+      await join.mutateAsync(output);
+      router.replace('/' as Href);
+    },
   });
   const [name, password] = [useFormField(f, 'name'), useFormField(f, 'password')];
   return (
@@ -151,11 +155,15 @@ function JoinForm({ token, link, until }: FormProps) {
 }
 
 function ResetForm({ token, link, until }: FormProps) {
+  const router = useRouter();
   const reset = useResetPassword();
   const f = useContractForm({
     schema: resetSchema,
     initial: { token, password: '' },
-    send: (output) => reset.mutateAsync(output),
+    send: async (output) => {
+      await reset.mutateAsync(output);
+      router.replace('/' as Href);
+    },
   });
   const password = useFormField(f, 'password');
   return (

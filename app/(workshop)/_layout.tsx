@@ -1,5 +1,6 @@
 import { Stack, usePathname, useRouter, type Href } from 'expo-router';
 import { useCallback, useEffect, useMemo } from 'react';
+import { View } from 'react-native';
 import { useAlarmBell } from '@/shared/client/alarm-bell';
 import { isOpen, useAlerts, useOpenAlertCount } from '@/shared/client/alerts';
 import { useLink } from '@/shared/client/link';
@@ -17,7 +18,7 @@ import { ShellStrip } from '@/shared/ui/screen/shell-strip';
 import { SideRail } from '@/shared/ui/screen/side-rail';
 import { TabBar } from '@/shared/ui/screen/tab-bar';
 import { NoticePrompt } from '@/shared/ui/shell/notice-prompt';
-import { placeOf, railItems, tabItems, titles } from '@/shared/ui/shell/places';
+import { placeOf, railItems, tabItems } from '@/shared/ui/shell/places';
 import { useTheme } from '@/shared/ui/theme/theme';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 
@@ -54,12 +55,7 @@ export default function WorkshopLayout() {
     >
       <ShellStrip.Provider value={<Strip />}>
         <Stack
-          screenOptions={({ route }) => ({
-            headerShown: false,
-            animation: 'none',
-            title: titles[route.name] ?? 'Bidewell',
-            contentStyle: { backgroundColor: colors.ground },
-          })}
+          screenOptions={{ headerShown: false, animation: 'none', contentStyle: { backgroundColor: colors.ground } }}
         />
       </ShellStrip.Provider>
       <Announcer />
@@ -75,7 +71,11 @@ function Strip() {
   const { zone, marks } = useFormats();
   const phone = useBreakpoint() === 'phone';
   if (state !== 'down' || since === null) return null;
-  return <OfflineStrip since={clock(since, zone, marks)} waiting={waiting} device={phone ? 'phone' : 'device'} />;
+  return (
+    <View style={{ marginBottom: 12 }}>
+      <OfflineStrip since={clock(since, zone, marks)} waiting={waiting} device={phone ? 'phone' : 'device'} />
+    </View>
+  );
 }
 
 /** Reads each new alert out, once. */

@@ -1,5 +1,6 @@
+import fs from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { placeOf, railItems, tabItems } from '@/shared/ui/shell/places';
+import { placeOf, railItems, tabItems, titleOf } from '@/shared/ui/shell/places';
 
 describe('places', () => {
   it('of the phone are four, with the open alerts counted', () => {
@@ -37,5 +38,25 @@ describe('places', () => {
     ['/me', 'more'],
   ])('%s is a task: no bottom bar, %s in the rail', (path, rail) => {
     expect(placeOf(path)).toEqual({ tab: null, rail });
+  });
+});
+
+describe('the title of the tab', () => {
+  it.each([
+    [['sign-in'], 'Sign in · Bidewell'],
+    [['(workshop)', 'bench'], 'Bench · Bidewell'],
+    [['(workshop)', 'charges', '[id]'], 'Charge · Bidewell'],
+    [['(workshop)', 'charges', '[id]', 'checks'], 'Before clipping on · Bidewell'],
+    [[], 'Bidewell'],
+  ])('of %j is %s', (segments, title) => expect(titleOf(segments)).toBe(title));
+
+  // A page without a title of its own is found by nobody in a history (WCAG 2.4.2).
+  it('is there for every route file', () => {
+    const files = fs.readdirSync('app', { recursive: true, encoding: 'utf8' }).filter((name) => name.endsWith('.tsx'));
+    const untitled = files
+      .map((name) => name.replace(/\.tsx$/, ''))
+      .filter((route) => !route.endsWith('_layout') && route !== 'index')
+      .filter((route) => titleOf(route.replace(/\/index$/, '').split('/')) === 'Bidewell');
+    expect(untitled).toEqual([]);
   });
 });
