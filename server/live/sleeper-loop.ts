@@ -77,9 +77,8 @@ export function makeSleeper(deps: LoopDeps): SleeperLoop {
     if (!running) return;
     let wait = LONGEST_SLEEP_MS;
     try {
-      const dueAt = await earliestDueAt(deps.dataSource.manager);
-      const failing = failedUntil.size > 0;
-      if (dueAt !== null && !failing) wait = dueAt - deps.clock.now();
+      const dueAt = await earliestDueAt(deps.dataSource.manager, [...failedUntil.keys()]);
+      if (dueAt !== null) wait = dueAt - deps.clock.now();
     } catch (error) {
       deps.log.error({ error }, 'the sleeper could not read the next due instant');
     }

@@ -128,10 +128,10 @@ export async function listDueCharges(
   });
 }
 
-/** Earliest due instant of all workshops, epoch ms; null: nothing waits. */
-export async function earliestDueAt(manager: EntityManager): Promise<number | null> {
+/** Earliest due instant of all workshops, epoch ms, but those of `skip`; null: nothing waits. */
+export async function earliestDueAt(manager: EntityManager, skip: readonly string[]): Promise<number | null> {
   const row = await manager.findOne(Charge, {
-    where: { nextDueAt: Not(IsNull()) },
+    where: { nextDueAt: Not(IsNull()), ...(skip.length === 0 ? {} : { id: Not(In([...skip])) }) },
     select: { id: true, nextDueAt: true },
     order: { nextDueAt: 'ASC' },
   });

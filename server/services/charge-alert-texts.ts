@@ -8,12 +8,15 @@ import {
   ampHoursText,
   ampsText,
   cellText,
+  clipText,
   clockText,
   durationText,
   listText,
   millivoltsText,
   plainAmpsText,
+  setVoltsText,
   titleOf,
+  upperFirst,
 } from './charge-words';
 
 export interface AlertText {
@@ -79,7 +82,7 @@ function swapCheck(file: ChargeFile, wait: SwapWait): string {
   const step = file.charge.option.steps[wait.stepIndex]!;
   const off = before.length === 0 ? 'That the resistor is off' : `That ${listText(before)} is off`;
   const names = channelNamesOf(file, wait.stepIndex);
-  const volts = step.setVolts === null ? null : `${step.setVolts.toFixed(2)}\u00a0V`;
+  const volts = step.setVolts === null ? null : setVoltsText(step.setVolts, step.direction);
   const amps = step.setAmps === null ? null : plainAmpsText(step.setAmps);
   const set = [volts, amps].filter((part) => part !== null).join(', ');
   const dial = names.length === 0 || set === '' ? '' : ` Then set ${listText(names)} to ${set}.`;
@@ -89,19 +92,28 @@ function swapCheck(file: ChargeFile, wait: SwapWait): string {
 export function lookInText(file: ChargeFile): AlertText {
   const { charge } = file;
   const reckoning = charge.reckoning?.reckoning;
-  const step = charge.option.steps[presentStep(file)];
-  const stands =
-    reckoning && isRunning(charge.stage)
-      ? `${ampsText(Math.abs(reckoning.amps))} and ${reckoning.terminalVolts.toFixed(2)}\u00a0V are expected`
-      : 'It rests, nothing flows';
+  const title = `Look-in at ${titleOf(charge)}`;
+  if (!reckoning || !isRunning(charge.stage))
+    return {
+      title,
+      seen: 'A look-in is due. It rests, nothing flows.',
+      checkFirst: 'Warmth, smell, the shape of the module.',
+    };
+  const stands = `${ampsText(Math.abs(reckoning.amps))} and ${clipText(reckoning.terminalVolts)} are expected`;
+  const joined = charge.option.steps[presentStep(file)]?.way === 'paralleled' ? ', the joined links' : '';
   return {
-    title: `Look in at ${titleAtChannel(file, presentStep(file))}`,
+    title,
     seen: `A look-in is due. ${stands}.`,
-    checkFirst:
-      step?.way === 'paralleled'
-        ? 'Warmth, smell, the joined links and the clips, then log what the charger shows.'
-        : 'Warmth, smell and the clips, then log what the charger shows.',
+    checkFirst: `Warmth, smell${joined} and the clips, then log what the charger shows.`,
   };
+}
+
+/** The group that is behind by more than the workshop lets pass; null: none is. */
+function oddGroup({ charge }: ChargeFile): { name: string; lagVolts: number } | null {
+  const reckoning = charge.reckoning?.reckoning;
+  if (!reckoning || reckoning.laggingGroup === null) return null;
+  if (Math.abs(reckoning.lagVolts) <= charge.frozen.lagLimitVolts) return null;
+  return { name: `group ${reckoning.laggingGroup + 1}`, lagVolts: reckoning.lagVolts };
 }
 
 /** Late against the plan: what stands in its way, as far as the numbers know. */
@@ -130,20 +142,17 @@ export function overdueText(file: ChargeFile, now: number): AlertText {
           checkFirst: 'The group voltages: enter them, and it is known.',
         };
   const likely = charge.likelyAt === null ? '' : ` Now ${clockText(charge.likelyAt, workshop.zone, now)}.`;
-  const reckoning = charge.reckoning?.reckoning;
-  const lag =
-    reckoning && reckoning.laggingGroup !== null
-      ? ` Group ${reckoning.laggingGroup + 1} lags ${millivoltsText(reckoning.lagVolts)}.`
-      : '';
+  const odd = oddGroup(file);
+  const lag = odd === null ? '' : ` ${upperFirst(odd.name)} lags ${millivoltsText(odd.lagVolts)}.`;
   return { title, seen: `${promised}${likely}${lag}`, checkFirst: overdueCheck(file) };
 }
 
 function overdueCheck(file: ChargeFile): string {
   const { charge } = file;
-  const lagging = charge.reckoning?.reckoning.laggingGroup ?? null;
   const names = listText(channelNamesOf(file, presentStep(file)));
   if (charge.stage === 'held') return `What ${titleOf(charge)} is held for, then resume or stop it.`;
   if (charge.stage === 'resting') return 'Nothing at the clips: it rests. Tell who waits for it.';
-  const clips = lagging === null ? 'the clips' : `warmth at group ${lagging + 1}, then its clips`;
-  return `${clips.charAt(0).toUpperCase()}${clips.slice(1)}, then what ${names === '' ? 'the meter' : names} shows in amps. Log it.`;
+  const odd = oddGroup(file);
+  const clips = odd === null ? 'The clips' : `Warmth at ${odd.name}, then its clips`;
+  return `${clips}, then what ${names === '' ? 'the meter' : names} shows in amps. Log it.`;
 }

@@ -4,7 +4,7 @@ import type { Channel } from '../entities/channel';
 import type { ChargeFile } from './charge-file';
 import { channelNamesOf } from './charge-steps';
 import { lookInTimes } from './charge-look-ins';
-import { cellText, clockText, groupsText, listText } from './charge-words';
+import { cellText, clockText, groupsText, listText, setVoltsText, upperFirst } from './charge-words';
 
 /** What a check says before anybody answers; `by` other than 'person' is locked. */
 export interface CheckWords {
@@ -114,14 +114,14 @@ export function attendanceWords(file: ChargeFile, now: number): CheckWords {
       : `look-in${times.length > 1 ? 's' : ''} ${listText(few)}`;
   return asked('attendance', {
     question: 'Does somebody stay in the building and look in?',
-    detail: `${lookIns.charAt(0).toUpperCase()}${lookIns.slice(1)}.`,
+    detail: `${upperFirst(lookIns)}.`,
     yes: `Somebody stays, ${lookIns}`,
     no: 'Nobody can stay',
   });
 }
 
-const down = (volts: number): string => `${(Math.floor(volts * 100 + 1e-6) / 100).toFixed(2)}${GAP}V`;
-const up = (volts: number): string => `${(Math.ceil(volts * 100 - 1e-6) / 100).toFixed(2)}${GAP}V`;
+const down = (volts: number): string => setVoltsText(volts, 'charge');
+const up = (volts: number): string => setVoltsText(volts, 'discharge');
 
 /** What the charger is set to: the one number that keeps a forgotten charge safe. */
 export function ceilingWords(file: ChargeFile, channel: Channel | null): CheckWords {

@@ -14,9 +14,15 @@ export function chargeNow(charge: Pick<Charge, 'reckoning'>, now: number): numbe
   return last - now > BACKWARDS_MS ? now : Math.max(now, last);
 }
 
-/** Seconds of the reckoning (0 = first current) as an instant; never before them, so that what is due then has happened. */
+/** Keeps an instant clear of the last binary digit of its seconds, ms. */
+const DIGIT_MS = 1e-3;
+
+/**
+ * Seconds of the reckoning (0 = first current) as an instant. Always a little after them, so that what is reckoned for
+ * this instant has happened by it: what is due at it would else be found not due, and be left for later.
+ */
 export function instantOf(charge: Pick<Charge, 'startedAt'>, seconds: number): number {
-  return (charge.startedAt ?? 0) + Math.ceil(seconds * 1000);
+  return (charge.startedAt ?? 0) + Math.ceil(seconds * 1000 + DIGIT_MS);
 }
 
 /** Instant as seconds of the reckoning. */

@@ -81,7 +81,10 @@ function runInstants(file: ChargeFile, at: number): (number | null)[] {
     }
     instants.push(at + REFRESH_MS);
   }
-  if (charge.stage === 'resting') instants.push(charge.checkDueAt, at + REFRESH_MS);
+  if (charge.stage === 'resting') {
+    const due = charge.checkDueAt ?? at;
+    instants.push(due > at ? due : at + SOON_MS, at + REFRESH_MS);
+  }
   if (charge.stage !== 'check-due') {
     const lookIn = dueLookIn(file, at) === null ? nextLookIn(file, at) : upcoming(file, at);
     instants.push(lookIn?.dueAt ?? null);

@@ -1,4 +1,5 @@
 import type { EntityManager } from 'typeorm';
+import type { Stage } from '@/shared/contract/charge';
 import type { Channel } from '../entities/channel';
 import type { ChannelHold } from '../entities/channel-hold';
 import type { Charge } from '../entities/charge';
@@ -34,6 +35,8 @@ export interface Bench {
 /** A charge with the rows that decide its stage and its picture. */
 export interface ChargeFile extends Bench {
   charge: Charge;
+  /** The stage it was read with; an act may set another. */
+  storedStage: Stage;
   spare: Spare;
   type: ModuleType;
   holds: ChannelHold[];
@@ -77,6 +80,7 @@ export async function loadFiles(
     return {
       ...around,
       charge,
+      storedStage: charge.stage,
       spare,
       type,
       holds: holds.get(charge.id) ?? [],

@@ -33,8 +33,9 @@ function wantedState(file: ChargeFile, hold: ChannelHold, now: number): HoldStat
  *
  * The unique index says whether a channel is free. A release that a late reading takes back does not take the channel
  * from somebody who has begun on it meanwhile.
+ * @returns whether any channel has changed hands
  */
-export async function syncHolds(manager: EntityManager, file: ChargeFile, now: number): Promise<void> {
+export async function syncHolds(manager: EntityManager, file: ChargeFile, now: number): Promise<boolean> {
   const { charge } = file;
   const changes = file.holds
     .map((hold) => ({ hold, wanted: wantedState(file, hold, now) }))
@@ -51,6 +52,7 @@ export async function syncHolds(manager: EntityManager, file: ChargeFile, now: n
     await updateHold(manager, charge.workshopId, hold.id, patch);
     Object.assign(hold, patch);
   }
+  return changes.length > 0;
 }
 
 /** Begin of the stretch that runs. */

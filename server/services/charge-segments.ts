@@ -2,7 +2,7 @@ import type { Segment } from '@/calc/plan-types';
 import type { TimedSegment } from '@/shared/contract/charge';
 import type { ChargeFile } from './charge-file';
 import { instantOf, optionZeroAt } from './charge-clock';
-import { isRunning, isWaitingToStart, swapWait } from './charge-stages';
+import { isWaitingToStart, swapWait } from './charge-stages';
 import { toInstant } from './instants';
 
 interface Stretch {
@@ -45,11 +45,20 @@ function stretches(file: ChargeFile, now: number): Stretch[] {
   const begun = charge.startedAt;
   // Wait and clip-on lie before the first current; the reckoning counts from there.
   const before = planned.filter((one) => one.from < begun).map((one) => ({ ...one, to: Math.min(one.to, begun) }));
-  const since = reckoning.reckoning.segments.map((segment) => {
-    const from = instantOf(charge, segment.fromS);
-    const to = instantOf(charge, segment.toS);
-    const moves = (charge.stage === 'held' || isRunning(charge.stage)) && from >= reckoning.at ? shift : 0;
-    return { kind: segment.kind, from: from + moves, to: to + moves };
+  const since = reckoning.reckoning.segments.map((segment) => ({
+    kind: segment.kind,
+    from: instantOf(charge, segment.fromS),
+    to: instantOf(charge, segment.toS),
+  }));
+  return [...before, ...moved(since, reckoning.at, shift).filter((one) => one.to > begun)];
+}
+
+/** What was still to come when it was reckoned begins later by the wait since; a stretch over that instant is cut there. */
+function moved(stretchesOf: readonly Stretch[], at: number, shift: number): Stretch[] {
+  if (shift === 0) return [...stretchesOf];
+  return stretchesOf.flatMap((one) => {
+    if (one.to <= at) return [one];
+    const later = { ...one, from: Math.max(one.from, at) + shift, to: one.to + shift };
+    return one.from < at ? [{ ...one, to: at }, later] : [later];
   });
-  return [...before, ...since.filter((one) => one.to > begun)];
 }

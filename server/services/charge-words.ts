@@ -26,6 +26,11 @@ export function durationText(seconds: number): string {
 export const cellText = (volts: number): string => `${minus(volts.toFixed(3))}${GAP}V`;
 /** '11.64 V' at the clips. */
 export const clipText = (volts: number): string => `${minus(volts.toFixed(2))}${GAP}V`;
+/** What a charger is set to, never rounded to the unsafe side: down while charging, up while discharging. */
+export function setVoltsText(volts: number, direction: 'charge' | 'discharge'): string {
+  const hundredths = direction === 'charge' ? Math.floor(volts * 100 + 1e-6) : Math.ceil(volts * 100 - 1e-6);
+  return clipText(hundredths / 100);
+}
 /** '10.0 A'. */
 export const ampsText = (amps: number): string => `${minus(amps.toFixed(1))}${GAP}A`;
 /** '20 A' as a charger is named or set. */
@@ -49,6 +54,7 @@ export const listText = (names: readonly string[]): string =>
   names.length <= 1 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
 /** 'Ready by' → 'ready by': to go on within a sentence. */
 export const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);
+export const upperFirst = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 /** A reason as the end of a sentence: without its own stop. */
 export const bare = (text: string): string => text.trim().replace(/[.\s]+$/, '');
 

@@ -21,7 +21,6 @@ import { loadFile, type ChargeFile } from './charge-file';
 import { syncHolds } from './charge-holds';
 import { lookInChanges } from './charge-look-ins';
 import { progress, type Note } from './charge-progress';
-import { isRunning } from './charge-stages';
 import { newId } from './ids';
 import { toInstant } from './instants';
 import { refusingTaken } from './unique-taken';
@@ -42,6 +41,9 @@ export interface Announcement {
   boardRev: number;
   charge: Pick<Charge, 'id' | 'rev'>;
   alerts: AlertChanges;
+  /** Where the spare stands has changed; who holds which channel has. */
+  stock: boolean;
+  channels: boolean;
   people: ChargeFile['people'];
 }
 
@@ -116,11 +118,12 @@ export async function settle(
 ): Promise<Announcement> {
   const { charge } = file;
   const stageBefore = charge.stage;
+  const storedStage = file.storedStage;
   const dueWas = charge.nextDueAt;
   const happened = progress(file, now);
-  // A person who saw 'charging' must not act on 'resting' without knowing; the taper changes nothing for a hand.
-  if (charge.stage !== stageBefore && !(isRunning(charge.stage) && isRunning(stageBefore))) charge.rev += 1;
-  await syncHolds(manager, file, now);
+  // A person who saw 'charging' must not act on 'resting' without knowing. A mere refresh of the levels is no new revision.
+  if (charge.stage !== stageBefore) charge.rev += 1;
+  const channels = await syncHolds(manager, file, now);
   await syncLookIns(manager, file, now);
   const alerts = await syncAlerts(manager, file, now, dueWas);
   charge.nextDueAt = nextDueAt(file, now);
@@ -131,7 +134,16 @@ export async function settle(
     [...notes, ...happened].map((note, place) => eventOf(charge, note, now + place)),
   );
   const boardRev = await raiseBoardRev(manager, charge.workshopId);
-  return { workshopId: charge.workshopId, boardRev, charge, alerts, people: file.people };
+  const stock = charge.stage !== storedStage;
+  return {
+    workshopId: charge.workshopId,
+    boardRev,
+    charge,
+    alerts,
+    people: file.people,
+    stock,
+    channels: channels || stock,
+  };
 }
 
 /** Lines written together keep their order by their instants of writing. */
@@ -173,6 +185,8 @@ export function announce(deps: Pick<Deps, 'hub' | 'sleeper'>, done: Announcement
   const { workshopId, charge, alerts } = done;
   deps.hub.toWorkshop(workshopId, 'board:changed', { rev: done.boardRev, at, chargeId: charge.id });
   deps.hub.toWorkshop(workshopId, 'charge:changed', { id: charge.id, rev: charge.rev, at });
+  if (done.stock) deps.hub.toWorkshop(workshopId, 'stock:changed', { at });
+  if (done.channels) deps.hub.toWorkshop(workshopId, 'equipment:changed', { at });
   for (const alert of alerts.raised)
     deps.hub.toWorkshop(workshopId, 'alert:raised', alertDto(alert as Alert, done.people));
   for (const id of alerts.changed) deps.hub.toWorkshop(workshopId, 'alert:changed', { id, at });

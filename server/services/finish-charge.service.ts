@@ -15,7 +15,7 @@ import { actInstant } from './charge-instants';
 import { isOpen } from './charge-stages';
 import { wrongStage } from './charge-stage-conflict';
 import { markVisit } from './charge-visit';
-import { ampHoursText, bare, durationText, groupsText, millivoltsText } from './charge-words';
+import { ampHoursText, bare, durationText, groupsText, millivoltsText, upperFirst } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
 import { correctedVolts } from './meter-trust';
@@ -102,11 +102,11 @@ function verdictText(verdict: CheckVerdict): string {
     return `Group ${one!.group + 1} is ${millivoltsText(one!.deviationVolts)} ${away}, outside. It needs ${needs}.`;
   }
   const all = groupsText(outside.map((group) => group.group));
-  return `${all.charAt(0).toUpperCase()}${all.slice(1)} are outside, at most ${millivoltsText(worst.deviationVolts)} ${side}.`;
+  return `${upperFirst(all)} are outside, at most ${millivoltsText(worst.deviationVolts)} ${side}.`;
 }
 
 /** The module goes into the pack. @throws DomainError 409 where it is not ready */
-export async function fitCharge(
+export function fitCharge(
   deps: Deps,
   member: Member,
   id: string,
@@ -114,7 +114,7 @@ export async function fitCharge(
   input: { note?: string | null },
   now: number,
 ): Promise<ChargeDto> {
-  const dto = await changeCharge(deps, member, id, rev, now, async (write) => {
+  return changeCharge(deps, member, id, rev, now, async (write) => {
     const { manager, file } = write;
     const { charge, spare } = file;
     if (charge.stage !== 'ready') throw wrongStage(write, 'Only what was checked and is in tolerance is fitted.');
@@ -124,12 +124,10 @@ export async function fitCharge(
     const place = charge.modulePosition === null ? '' : ` as module ${charge.modulePosition}`;
     write.note('fitted', `Fitted: ${spare.label}${place}.${input.note ? ` ${bare(input.note)}.` : ''}`);
   });
-  announceStock(deps, member, now);
-  return dto;
 }
 
 /** The spare goes back on the shelf, in tolerance or not. @throws DomainError 409 before its check is due */
-export async function shelveCharge(
+export function shelveCharge(
   deps: Deps,
   member: Member,
   id: string,
@@ -137,7 +135,7 @@ export async function shelveCharge(
   input: { shelfPlace: string | null; note?: string | null },
   now: number,
 ): Promise<ChargeDto> {
-  const dto = await changeCharge(deps, member, id, rev, now, async (write) => {
+  return changeCharge(deps, member, id, rev, now, async (write) => {
     const { manager, file } = write;
     const { charge, spare } = file;
     if (charge.stage !== 'ready' && charge.stage !== 'check-due')
@@ -153,8 +151,6 @@ export async function shelveCharge(
       charge.checkedAt === null ? ' Its groups were not checked: read them before it is planned again.' : '';
     write.note('shelved', `${place}.${input.note ? ` ${bare(input.note)}.` : ''}${unread}`);
   });
-  announceStock(deps, member, now);
-  return dto;
 }
 
 /**

@@ -40,7 +40,8 @@ export async function keepPlan(deps: Deps, member: Member, request: KeepPlanRequ
     const file = await loadFile(manager, member.workshopId, charge.id);
     const text =
       toppedUp === null ? keptText(file, now) : `${keptText(file, now)} It tops up ${toppedUp.charge.number}.`;
-    done.push(await settle(manager, file, now, [{ at: now, kind: 'planned', personId: member.personId, text }]));
+    const kept = await settle(manager, file, now, [{ at: now, kind: 'planned', personId: member.personId, text }]);
+    done.push({ ...kept, stock: true, channels: true });
     return { dto: await chargeDto(manager, deps.config, file, member, now), announcements: done };
   });
   const { dto, announcements } = await refusingTaken(kept);

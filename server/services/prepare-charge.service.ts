@@ -145,5 +145,6 @@ export async function dropCharge(deps: Deps, member: Member, id: string, rev: nu
   const at = toInstant(now);
   deps.hub.toWorkshop(workshopId, 'board:changed', { rev: boardRev, at, chargeId: id });
   deps.hub.toWorkshop(workshopId, 'stock:changed', { at });
+  deps.hub.toWorkshop(workshopId, 'equipment:changed', { at });
   deps.sleeper.poke();
 }

@@ -4,7 +4,6 @@ import type { Deps, Member } from '../deps';
 import { conflict } from '../errors/domain-error';
 import { insertRun, updateRun } from '../repositories/charge-rows.repository';
 import { updateSpare } from '../repositories/charge-stock.repository';
-import { announceStock } from './announce';
 import { chargeCard } from './charge-dto';
 import { actInstant } from './charge-instants';
 import { reckonAt } from './charge-reckoning';
@@ -13,7 +12,7 @@ import { wrongStage } from './charge-stage-conflict';
 import { SWAP_REASON, channelNamesOf, handText, nextSwap } from './charge-steps';
 import { instantOf } from './charge-clock';
 import { markVisit } from './charge-visit';
-import { ampHoursText, bare, clockText, listText, titleOf } from './charge-words';
+import { ampHoursText, bare, durationText, clockText, listText, titleOf } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
 import { holdersOfStep, takenText } from './start-block';
@@ -95,7 +94,7 @@ export function resumeCharge(
     charge.heldFrom = null;
     charge.heldAt = null;
     await markVisit(write, at, null);
-    write.note('resumed', `Resumed after ${Math.max(1, Math.round(heldS / 60))}\u00a0min.`, at);
+    write.note('resumed', `Resumed after ${durationText(Math.max(60, heldS))}.`, at);
   });
 }
 
@@ -174,7 +173,7 @@ export function currentOff(
  * again before it is planned again.
  * @throws DomainError 409 where it is not under way
  */
-export async function stopCharge(
+export function stopCharge(
   deps: Deps,
   member: Member,
   id: string,
@@ -182,7 +181,7 @@ export async function stopCharge(
   input: { reason: string; at?: string; quarantine?: boolean },
   now: number,
 ): Promise<ChargeDto> {
-  const dto = await changeCharge(deps, member, id, rev, now, async (write) => {
+  return changeCharge(deps, member, id, rev, now, async (write) => {
     const { manager, file } = write;
     const { charge, spare } = file;
     if (!isUnderWay(charge.stage)) throw wrongStage(write, 'There is nothing to stop.');
@@ -206,8 +205,6 @@ export async function stopCharge(
       });
     write.note('stopped', stopText(write, input), at);
   });
-  announceStock(deps, member, now);
-  return dto;
 }
 
 function stopText({ file }: ChargeWrite, input: { reason: string; quarantine?: boolean }): string {

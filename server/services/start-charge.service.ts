@@ -16,7 +16,7 @@ import { actInstant } from './charge-instants';
 import { stageFrom, isWaitingToStart } from './charge-stages';
 import { channelNamesOf, stepsOfSwap } from './charge-steps';
 import { wrongStage } from './charge-stage-conflict';
-import { ampsText, clipText, clockText, listText, titleOf } from './charge-words';
+import { ampsText, setVoltsText, clockText, listText, titleOf } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
 import { holdersOfStep, takenText } from './start-block';
@@ -157,7 +157,7 @@ function startText({ file, now }: ChargeWrite): string {
   const step = charge.option.steps[0];
   const names = listText(channelNamesOf(file, 0));
   const set = [
-    step?.setVolts == null ? null : clipText(step.setVolts),
+    step?.setVolts == null ? null : setVoltsText(step.setVolts, step.direction),
     step?.setAmps == null ? null : ampsText(step.setAmps),
   ].filter((part) => part !== null);
   const dial = set.length === 0 ? '' : `, set to ${set.join(' and ')}`;

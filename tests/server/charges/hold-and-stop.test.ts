@@ -38,6 +38,11 @@ describe('hold, resume, stop', () => {
     expect(held.stage).toBe('held');
     // The comb moves with the clock.
     expect(Math.abs(at(held.ready!.likely) - ready - 30 * minute)).toBeLessThan(minute);
+    // In the picture nothing flows between the hold and now; what is to come begins now.
+    const current = held.segments.filter((segment) => segment.kind === 'cc');
+    expect(current).toHaveLength(2);
+    expect(Math.abs(at(current[0]!.to) - at(held.heldAt))).toBeLessThan(10);
+    expect(Math.abs(at(current[1]!.from) - bench.server.clock.now())).toBeLessThan(1000);
     const resumed = await did(bench, held, 'resume');
     expect(resumed.stage).toBe('charging');
     expect(Math.abs(at(resumed.currentEndAt) - end - 30 * minute)).toBeLessThan(minute);

@@ -94,6 +94,9 @@ describe('from the shelf into the pack', () => {
       'fitted',
     ]);
     expect((await boardOf(bench)).charges).toEqual([]);
+    // Lists of spares and chargers are told as well: the spare has moved, the channel was taken and freed.
+    expect(bench.server.hub.of('stock:changed').length).toBeGreaterThanOrEqual(5);
+    expect(bench.server.hub.of('equipment:changed').length).toBeGreaterThanOrEqual(3);
   });
 
   test('on the mark: the current tapers, and the stage says so before it ends', async () => {

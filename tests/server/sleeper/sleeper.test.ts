@@ -2,7 +2,9 @@ import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
 import fs from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
+import { seededRandom } from '@/calc/index';
 import { makeDataSource } from '@/server/data-source';
+import { instantOf, secondsOf } from '@/server/services/charge-clock';
 import { Alert } from '@/server/entities/alert';
 import { Charge } from '@/server/entities/charge';
 import { makeSleeper } from '@/server/live/sleeper-loop';
@@ -222,4 +224,15 @@ describe('the loop', () => {
     expect(await bench.sleeper.runDue()).toBe(0);
     expect(bench.server.hub.told).toHaveLength(told);
   });
+});
+
+test('an instant of the reckoning has come when its millisecond has: 20 000 odd ends of current are all over by then', () => {
+  const random = seededRandom(3);
+  for (let count = 0; count < 20_000; count += 1) {
+    const charge = { startedAt: 1_780_000_000_000 + Math.floor(random() * 1e9) };
+    const seconds = random() < 0.5 ? Math.round(random() * 2e7) / 1000 + 3600 : random() * 20_000 + random() / 3;
+    const at = instantOf(charge, seconds);
+    expect(secondsOf(charge, at)).toBeGreaterThanOrEqual(seconds);
+    expect(at - charge.startedAt - seconds * 1000).toBeLessThan(1.1);
+  }
 });
