@@ -2,15 +2,22 @@ import { useRouter, type Href } from 'expo-router';
 import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { useBoard } from '@/shared/client/board';
+import { useChargers } from '@/shared/client/chargers';
 import { useNow } from '@/shared/client/clock';
 import { useLink } from '@/shared/client/link';
-import { useMember } from '@/shared/client/session';
-import { armSound, useSoundState } from '@/shared/client/sound';
+import { useModuleTypes } from '@/shared/client/module-types';
+import { useCan, useMember } from '@/shared/client/session';
+import { armSound, switchSound, useSoundState } from '@/shared/client/sound';
+import { useSpares } from '@/shared/client/spares';
+import { useWorkshop } from '@/shared/client/workshop';
+import { SoundTool } from '@/shared/ui/alerts/sound-tool';
 import { BenchList } from '@/shared/ui/bench/bench-list';
+import { FirstPlan } from '@/shared/ui/bench/first-plan';
+import { needsOf } from '@/shared/ui/bench/plan-needs';
+import { firstName } from '@/shared/ui/charge/card-model';
 import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { Button } from '@/shared/ui/primitives/button';
-import { IconButton } from '@/shared/ui/primitives/icon-button';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { Empty } from '@/shared/ui/states/empty';
@@ -28,39 +35,41 @@ export default function Bench() {
   const { zone, marks } = useFormats();
   const now = useNow(1000);
   const board = useBoard();
+  const settings = useWorkshop().data;
+  const sound = useSoundState();
   const wide = useBreakpoint() === 'wide';
   const old = useLink().state === 'down';
   const go = (path: string) => router.push(path as Href);
   const plan = (
     <Button title="Plan a charge" icon="plan" onPress={() => go('/plan')} size={wide ? 'small' : 'normal'} />
   );
-  const charges = board.data?.charges;
+  const charges = board.data?.charges ?? null;
+  const some = charges !== null && charges.length > 0;
   return (
     <Screen
       header={
         <HeaderBar
           title="Bench"
-          sub={`${person.name.split(' ')[0]} · ${workshop.name}`}
+          sub={`${firstName(person.name)} · ${workshop.name}`}
           clock={clock(now, zone, marks)}
-          tools={<Sound />}
-          action={charges && charges.length > 0 ? plan : undefined}
+          tools={<SoundTool state={sound} onArm={() => void armSound()} onSwitch={switchSound} />}
+          action={some ? plan : undefined}
         />
       }
       foot={
-        wide || !charges || charges.length === 0 ? undefined : (
-          <View style={{ paddingHorizontal: margin.phone, paddingVertical: 12 }}>{plan}</View>
-        )
+        some && !wide ? <View style={{ paddingHorizontal: margin.phone, paddingVertical: 10 }}>{plan}</View> : undefined
       }
     >
-      {charges ? (
-        charges.length === 0 ? (
-          <Empty
-            sentence="No charges. Plan the first from a spare on the shelf."
-            action={{ title: 'Plan a charge', icon: 'plan', onPress: () => go('/plan') }}
-          />
-        ) : (
-          <BenchList charges={charges} now={now} old={old} onGo={go} />
-        )
+      {some && board.data ? (
+        <BenchList
+          charges={charges}
+          at={{ now, asOf: Date.parse(board.data.at) }}
+          lagLimitVolts={settings === undefined ? undefined : settings.lagLimitMillivolts / 1000}
+          old={old}
+          onGo={go}
+        />
+      ) : charges ? (
+        <EmptyBench onGo={go} />
       ) : board.isError ? (
         <ErrorState
           failed="The bench could not be read."
@@ -75,17 +84,22 @@ export default function Bench() {
   );
 }
 
-/** Shown only while this device would stay silent. */
-function Sound() {
-  const state = useSoundState();
-  if (state === 'none') return null;
-  return state === 'muted' ? (
-    <IconButton icon="muted" label="The sound is muted: tap to hear alerts" onPress={() => void armSound()} />
-  ) : (
-    <IconButton
-      icon={state === 'on' ? 'sound' : 'muted'}
-      label={state === 'on' ? 'Sound is on' : 'Sound is off'}
-      onPress={() => void armSound()}
-    />
+/** The first day, or all is fitted: the one action, and what is still missing for it. */
+function EmptyBench({ onGo }: { onGo: (path: string) => void }) {
+  const chargers = useChargers().data;
+  const types = useModuleTypes().data;
+  const spares = useSpares().data;
+  const needs = needsOf(
+    { chargers, types, spares },
+    { equipment: useCan('equipment:write'), stock: useCan('stock:write') },
+  );
+  const complete = needs?.every((need) => need.done) ?? false;
+  return (
+    <Empty
+      sentence="No charges. Plan one from a spare on the shelf."
+      action={{ title: 'Plan a charge', icon: 'plan', onPress: () => onGo('/plan') }}
+    >
+      <FirstPlan needs={complete ? null : needs} onGo={onGo} />
+    </Empty>
   );
 }

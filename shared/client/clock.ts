@@ -80,6 +80,8 @@ export function makeClock(deviceNow: () => number) {
 export const serverClock = makeClock(() => Date.now());
 /** The server's time now, epoch ms. For handlers; components use `useNow`. */
 export const serverNow = (): number => serverClock.now();
+/** An instant of this device's clock (TanStack's `dataUpdatedAt`) on the server's, epoch ms. */
+export const serverTimeOf = (deviceInstant: number): number => deviceInstant + serverNow() - Date.now();
 
 interface Ticker {
   get: () => number;

@@ -1,36 +1,47 @@
 import { useState } from 'react';
 import { View } from 'react-native';
 import type { ChargeCardDto } from '@/shared/contract/charge';
-import { clock } from '../format/clock';
+import { clock as clockWords } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { clockTicks } from '../wait-ribbon/ticks';
 import { TimeAxis } from '../wait-ribbon/time-axis';
 import { ribbonTwin } from '../wait-ribbon/twin';
 import { WaitRibbon } from '../wait-ribbon/wait-ribbon';
 import { cardRibbon } from './card-drawings';
+import type { CardClock } from './card-model';
 
-/** The ribbon of one charge on its own axis, as wide as its place. */
+/** The ribbon of one charge, as wide as its place; on its own axis, or on one that rows share. */
 export function CardRibbon({
   card,
-  now,
+  at,
   height = 56,
   axis = true,
+  shared,
+  nowMark = true,
   stale = false,
 }: {
   card: ChargeCardDto;
-  /** Server's epoch ms; one a minute is enough. */
-  now: number;
+  at: CardClock;
   height?: number;
+  /** Its own clock under it. */
   axis?: boolean;
+  /** One axis for all rows, epoch ms; a ribbon that runs off it ends in two slanted strokes. */
+  shared?: { from: number; to: number };
+  nowMark?: boolean;
   stale?: boolean;
 }) {
   const { zone, marks } = useFormats();
   const [width, setWidth] = useState(0);
   const zero = Date.parse(card.startedAt ?? card.clipOnAt);
-  const ribbon = cardRibbon(card, now, zero);
-  const at = (s: number) => clock(zero + s * 1000, zone, marks);
+  const own = cardRibbon(card, at, zero);
+  const ribbon = shared ? { ...own, fromS: (shared.from - zero) / 1000, toS: (shared.to - zero) / 1000 } : own;
+  const words = (s: number) => clockWords(zero + s * 1000, zone, marks);
+  const showsNow = nowMark && ribbon.showsNow;
   return (
-    <View onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))} style={{ minHeight: height }}>
+    <View
+      onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))}
+      style={{ minHeight: height, overflow: shared ? 'hidden' : 'visible' }}
+    >
       {width === 0 ? null : (
         <>
           <WaitRibbon
@@ -38,15 +49,17 @@ export function CardRibbon({
             width={width}
             height={height}
             padTop={ribbon.lookIns.length > 0 ? 18 : 8}
-            padBottom={ribbon.nowS === null ? 0 : 12}
+            padBottom={showsNow ? 12 : 2}
+            nowMark={showsNow}
             stale={stale}
-            twin={ribbonTwin({ ...ribbon, at })}
+            line={!shared}
+            twin={ribbonTwin({ ...own, at: words })}
           />
           {axis ? (
             <TimeAxis
-              ticks={clockTicks({ zeroInstant: zero, fromS: ribbon.fromS, toS: ribbon.toS, width, zone, marks })}
-              fromS={ribbon.fromS}
-              toS={ribbon.toS}
+              ticks={clockTicks({ zeroInstant: zero, fromS: own.fromS, toS: own.toS, width, zone, marks })}
+              fromS={own.fromS}
+              toS={own.toS}
               width={width}
             />
           ) : null}

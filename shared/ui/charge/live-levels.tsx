@@ -1,44 +1,63 @@
 import { View } from 'react-native';
+import { Path, Svg } from 'react-native-svg';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ampHoursNumber, celsius, deviationWords, millivolts, tolerance, voltsNumber } from '../format/quantities';
 import { useFormats } from '../format/formats';
 import { LevelColumn } from '../level-column/level-column';
 import { Num } from '../primitives/num';
-import { Txt } from '../primitives/txt';
+import { Span, Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
+import { useTheme } from '../theme/theme';
 import { columnGroups, columnScale } from './card-drawings';
 import { isFlowing, stageOf } from './card-model';
 
-/** The lagging group in words, and whether it will end within the tolerance. */
-function lagWords(charge: ChargeDto): string | null {
+/** The lagging group in words, and where it will end by the plan; null: none lags. */
+function lagWords(charge: ChargeDto): { lags: string; ends: string } | null {
   if (charge.laggingGroup === null) return null;
-  const name = `G${charge.laggingGroup + 1}`;
+  const lags = `G${charge.laggingGroup + 1} lags ${millivolts(charge.lagVolts)}.`;
   const planned = charge.option.endGroupVolts[charge.laggingGroup];
-  const end = planned === undefined ? null : planned - charge.targetVolts;
-  const lag = `${name} lags ${millivolts(Math.abs(charge.lagVolts))}.`;
-  if (end === null) return lag;
-  return Math.abs(end) <= charge.toleranceVolts
-    ? `${lag} It will end within ${millivolts(charge.toleranceVolts)}.`
-    : `${lag} By the plan it ends ${deviationWords(end)}.`;
+  if (planned === undefined) return { lags, ends: '' };
+  const end = planned - charge.targetVolts;
+  return {
+    lags,
+    ends:
+      Math.abs(end) <= charge.toleranceVolts
+        ? `By the plan it ends within ${millivolts(charge.toleranceVolts)}.`
+        : `By the plan it ends ${deviationWords(end)}.`,
+  };
 }
 
-/** The groups as they stand, the target, and what is still to bring in. */
-export function LiveLevels({ charge }: { charge: ChargeDto }) {
+/**
+ * The groups as they stand, the target, and what is still to bring in.
+ *
+ * @param stacked the facts stand under the column: the left column of the desk
+ */
+export function LiveLevels({
+  charge,
+  lagLimitVolts,
+  stacked = false,
+}: {
+  charge: ChargeDto;
+  lagLimitVolts?: number;
+  stacked?: boolean;
+}) {
   const styles = useStyles();
+  const { colors } = useTheme();
   const { marks } = useFormats();
   const down = charge.direction === 'discharge';
   const left = Math.max(0, charge.plannedAh - charge.deliveredAh);
   const lag = lagWords(charge);
+  const begun = charge.startedAt !== null;
   return (
     <View>
-      <View style={styles.row}>
+      <View style={stacked ? styles.stack : styles.row}>
         <LevelColumn
           place="live"
           stage={stageOf(charge)}
-          groups={columnGroups(charge, (volts) => voltsNumber(volts, marks))}
+          groups={columnGroups(charge, { lagLimitVolts, text: (volts) => voltsNumber(volts, marks) })}
           targetVolts={charge.targetVolts}
           toleranceVolts={charge.toleranceVolts}
-          scale={columnScale(charge, 'live')}
+          scale={columnScale(charge, 'live', lagLimitVolts)}
           reckoned={charge.groups.some((group) => group.reckoned)}
           name={charge.spare.label}
           labels
@@ -46,7 +65,7 @@ export function LiveLevels({ charge }: { charge: ChargeDto }) {
           tab
           moving
         />
-        <View style={styles.facts}>
+        <View style={[styles.facts, stacked && styles.factsUnder]}>
           <View>
             <Txt kind="small" tone="ink2">
               Target
@@ -58,21 +77,32 @@ export function LiveLevels({ charge }: { charge: ChargeDto }) {
           </View>
           <View>
             <Txt kind="small" tone="ink2">
-              {down ? 'Still to take out' : 'Still to bring in'}
+              {begun ? (down ? 'Still to take out' : 'Still to bring in') : down ? 'To take out' : 'To bring in'}
             </Txt>
             <Num value={ampHoursNumber(left, marks)} unit="Ah" />
-            <Txt kind="small" tone="ink2">
-              {`${ampHoursNumber(charge.deliveredAh, marks)} of ${ampHoursNumber(charge.plannedAh, marks)} Ah ${down ? 'out' : 'in'}`}
-            </Txt>
+            {begun ? (
+              <Txt kind="small" tone="ink2">
+                {`${ampHoursNumber(charge.deliveredAh, marks)} of ${ampHoursNumber(charge.plannedAh, marks)} Ah ${down ? 'out' : 'in'}`}
+              </Txt>
+            ) : null}
           </View>
-          {lag ? <Txt>{lag}</Txt> : null}
+          {lag ? (
+            <Txt>
+              <Span bold>{lag.lags}</Span> {lag.ends}
+            </Txt>
+          ) : null}
         </View>
       </View>
       {isFlowing(charge) ? (
-        <Txt kind="small" tone="ink2">
-          ◀ at the clips, while current flows. The fill is the rest voltage reckoned from it; the line across it is
-          where the charge began.
-        </Txt>
+        <View style={styles.key}>
+          <Svg width={10} height={13} viewBox="0 0 10 13" style={styles.mark} aria-hidden>
+            <Path d="M1 6.5l8-6v12z" fill={colors.ink2} />
+          </Svg>
+          <Txt kind="small" tone="ink2" style={styles.keyWords}>
+            at the clips, while current flows. The fill is the rest voltage reckoned from it; the line across it is
+            where the charge began.
+          </Txt>
+        </View>
       ) : null}
     </View>
   );
@@ -80,5 +110,10 @@ export function LiveLevels({ charge }: { charge: ChargeDto }) {
 
 const useStyles = makeStyles(() => ({
   row: { flexDirection: 'row', columnGap: 18, marginBottom: 8 },
+  stack: { rowGap: 12, marginBottom: 8 },
   facts: { flex: 1, minWidth: 110, rowGap: 14, paddingTop: 20 },
+  factsUnder: { paddingTop: 0 },
+  key: { flexDirection: 'row', columnGap: 8 },
+  mark: { marginTop: 3 },
+  keyWords: { flex: 1 },
 }));

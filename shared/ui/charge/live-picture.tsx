@@ -9,14 +9,15 @@ import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
 import { clockTicks } from '../wait-ribbon/ticks';
 import { cardRibbon } from './card-drawings';
+import type { CardClock } from './card-model';
 
 /** Volts and amps of the plan with the readings on it. Loaded after the screen, since it brings the charts. */
-export default function LivePicture({ charge, now }: { charge: ChargeDto; now: number }) {
+export function LivePicture({ charge, at }: { charge: ChargeDto; at: CardClock }) {
   const { zone, marks } = useFormats();
   const [width, setWidth] = useState(0);
   const zero = Date.parse(charge.startedAt ?? charge.clipOnAt);
   const { trace } = charge.option;
-  const ribbon = cardRibbon(charge, now, zero);
+  const ribbon = cardRibbon(charge, at, zero);
   const toS = Math.max(trace.at(-1)?.s ?? 0, ribbon.toS);
   const count = Math.max(1, charge.groups.length);
   const readings = charge.readings

@@ -1,4 +1,3 @@
-import { useState } from 'react';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ampHoursNumber, clipVolts } from '../format/quantities';
 import { useFormats } from '../format/formats';
@@ -6,7 +5,9 @@ import { CheckBox } from '../primitives/check-box';
 import { ChoiceList } from '../primitives/choice-row';
 import { ConfirmSheet } from '../primitives/confirm-sheet';
 import { Field } from '../primitives/field';
-import { Txt } from '../primitives/txt';
+import { Rule } from '../primitives/rule';
+import { Span, Txt } from '../primitives/txt';
+import { channelsOf, isFlowing } from './card-model';
 
 const other = 'other';
 const reasons = {
@@ -24,74 +25,94 @@ const reasons = {
   ],
 } as const;
 
+/** What is chosen and typed so far. */
+export interface StopDraft {
+  chosen: string | null;
+  words: string;
+  quarantine: boolean;
+}
+export const noStopDraft: StopDraft = { chosen: null, words: '', quarantine: false };
+
 /** Stop or hold a charge: why, from a short list or in words; the safe choice is nearest the thumb. */
 export function StopSheet({
   kind,
   charge,
-  open,
+  draft,
   busy,
   problem,
+  onDraft,
   onClose,
   onConfirm,
 }: {
   kind: 'stop' | 'hold';
   charge: ChargeDto;
-  open: boolean;
+  draft: StopDraft;
   busy: boolean;
   problem: string | null;
+  onDraft: (draft: StopDraft) => void;
   onClose: () => void;
   onConfirm: (input: { reason: string; quarantine: boolean }) => void;
 }) {
   const { marks } = useFormats();
-  const [chosen, setChosen] = useState<string | null>(null);
-  const [words, setWords] = useState('');
-  const [quarantine, setQuarantine] = useState(false);
+  const { chosen, words, quarantine } = draft;
   const reason = chosen === other ? words.trim() : (chosen ?? '');
-  const channel = charge.channelNames.join(', ');
+  const channel = channelsOf(charge);
   const mean = charge.groups.reduce((sum, group) => sum + group.volts, 0) / Math.max(1, charge.groups.length);
   const stop = kind === 'stop';
+  const flows = isFlowing(charge);
+  const brought = `${ampHoursNumber(charge.deliveredAh, marks)} of ${ampHoursNumber(charge.plannedAh, marks)} Ah ${charge.direction === 'charge' ? 'in' : 'out'}, about ${clipVolts(mean, marks)} a group, reckoned and not measured.`;
   return (
     <ConfirmSheet
-      open={open}
+      open
       title={stop ? `Stop the charge of ${charge.spare.label}` : `Hold the charge of ${charge.spare.label}`}
-      confirm={stop ? 'It is off: stop the charge' : 'It is off: hold the charge'}
-      safe="Let it run"
+      confirm={stop ? (flows ? 'It is off: stop the charge' : 'Stop the charge') : 'It is off: hold the charge'}
+      safe={stop && !flows ? 'Keep it' : 'Let it run'}
       ready={reason !== ''}
       why="Say why first. It is kept with the charge."
       busy={busy}
       onClose={onClose}
-      onConfirm={() => onConfirm({ reason, quarantine })}
+      onConfirm={() => onConfirm({ reason, quarantine: stop && quarantine })}
     >
-      <Txt>
-        <Txt bold>{channel ? `Switch ${channel} off at the charger first. ` : ''}</Txt>
+      <Txt tone="ink2">
+        {channel && flows ? <Span bold tone="ink">{`Switch ${channel} off at the charger first. `}</Span> : null}
         Bidewell switches nothing. Here you note that it was {stop ? 'stopped' : 'held'}, and why.
+      </Txt>
+      <Txt kind="label" style={{ marginTop: 14, marginBottom: 2 }}>
+        Why
       </Txt>
       <ChoiceList
         label="Why"
         value={chosen}
-        onChange={setChosen}
+        onChange={(value) => onDraft({ ...draft, chosen: value })}
         outset={14}
         choices={[
-          ...reasons[kind].map((title) => ({ value: title, title })),
+          ...reasons[kind].map((title) => ({ value: title as string, title })),
           { value: other, title: 'Something else' },
         ]}
       />
       {chosen === other ? (
-        <Field label="The reason" value={words} onChangeText={setWords} maxLength={300} autoFocus />
+        <Field
+          label="The reason"
+          value={words}
+          onChangeText={(text) => onDraft({ ...draft, words: text })}
+          maxLength={300}
+          autoFocus
+        />
       ) : null}
       {stop ? (
         <CheckBox
           checked={quarantine}
-          onChange={setQuarantine}
+          onChange={(value) => onDraft({ ...draft, quarantine: value })}
           title={`Put ${charge.spare.label} into quarantine`}
           meaning="It is not offered for a plan until a foreman releases it."
         />
       ) : null}
+      <Rule gap={8} />
       <Txt kind="small" tone="ink2">
-        {`${ampHoursNumber(charge.deliveredAh, marks)} of ${ampHoursNumber(charge.plannedAh, marks)} Ah ${charge.direction === 'charge' ? 'in' : 'out'}, about ${clipVolts(mean, marks)} a group, reckoned and not measured. ${stop ? `${charge.title} then has no charge.` : 'Resume goes on from what is reached then.'}`}
+        {`${brought} ${stop ? `${charge.title} then has no charge.` : 'Resume goes on from what is reached then.'}`}
       </Txt>
       {problem ? (
-        <Txt tone="alarm" bold role="alert">
+        <Txt kind="label" tone="alarm" role="alert">
           {problem}
         </Txt>
       ) : null}

@@ -1,0 +1,186 @@
+import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
+import { useState } from 'react';
+import { isConflict, isProblem, sentenceOf } from '@/shared/client/api-problem';
+import { actProblem } from '@/shared/client/charge-acts';
+import { useAnswerCheck, useCharge, useStartCharge } from '@/shared/client/charges';
+import { useNow } from '@/shared/client/clock';
+import { useContractForm, wrongSentence } from '@/shared/client/forms';
+import { useLink } from '@/shared/client/link';
+import { useMeters } from '@/shared/client/meters';
+import { useAddSpareReading } from '@/shared/client/spares';
+import type { ChargeDto, CheckCode } from '@/shared/contract/charge';
+import { spareReadingSchemaFor } from '@/shared/contract/spare';
+import { channelsOf, isToCome } from '@/shared/ui/charge/card-model';
+import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
+import { CheckFoot } from '@/shared/ui/charge/check-foot';
+import { CheckList } from '@/shared/ui/charge/check-list';
+import type { CheckValues } from '@/shared/ui/charge/check-form';
+import { ReadAgainSheet } from '@/shared/ui/charge/read-again-sheet';
+import { WhatToSet } from '@/shared/ui/charge/what-to-set';
+import { clock, moment } from '@/shared/ui/format/clock';
+import { useFormats } from '@/shared/ui/format/formats';
+import { Button } from '@/shared/ui/primitives/button';
+import { StandingLine } from '@/shared/ui/primitives/call-out';
+import { useToast } from '@/shared/ui/primitives/toast';
+import { Columns } from '@/shared/ui/screen/columns';
+import { Foot } from '@/shared/ui/screen/foot';
+import { HeaderBar } from '@/shared/ui/screen/header-bar';
+import { Screen } from '@/shared/ui/screen/screen';
+
+export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
+
+/** The checks before clipping on, answered one by one and kept with the charge. */
+export default function Checks() {
+  const { id } = useLocalSearchParams<{ id: string }>();
+  const router = useRouter();
+  const query = useCharge(id);
+  const { zone, marks } = useFormats();
+  const now = useNow(1000);
+  const back = () => (router.canGoBack() ? router.back() : router.replace(`/charges/${id}` as Href));
+  if (query.data) return <Sheet charge={query.data} now={now} onBack={back} onRead={() => void query.refetch()} />;
+  return (
+    <Screen single header={<HeaderBar title="Before clipping on" onBack={back} clock={clock(now, zone, marks)} />}>
+      <ChargeMissing
+        gone={isProblem(query.error) && query.error.status === 404}
+        problem={query.isError ? sentenceOf(query.error) : null}
+        busy={query.isFetching}
+        onRetry={() => void query.refetch()}
+        onBack={back}
+      />
+    </Screen>
+  );
+}
+
+function Sheet({
+  charge,
+  now,
+  onBack,
+  onRead,
+}: {
+  charge: ChargeDto;
+  now: number;
+  onBack: () => void;
+  onRead: () => void;
+}) {
+  const router = useRouter();
+  const toast = useToast();
+  const { zone, marks } = useFormats();
+  const offline = useLink().state === 'down';
+  const answer = useAnswerCheck();
+  const start = useStartCharge();
+  const [changing, setChanging] = useState<CheckCode | null>(null);
+  const [reading, setReading] = useState(false);
+  const [problem, setProblem] = useState<string | null>(null);
+  const closed = !isToCome(charge);
+  const live = `/charges/${charge.id}`;
+  const begin = () => {
+    setProblem(null);
+    start.mutate(
+      { id: charge.id, rev: charge.rev },
+      {
+        onSuccess: () => {
+          toast({ text: 'The timer runs.' });
+          router.replace(live as Href);
+        },
+        onError: (error) => {
+          setProblem(actProblem(error));
+          // Taken, changed or ruled out meanwhile: the sheet shows it as it stands.
+          if (isConflict(error) || (isProblem(error) && error.status === 422)) onRead();
+        },
+      },
+    );
+  };
+  const channel = channelsOf(charge);
+  return (
+    <Screen
+      header={
+        <HeaderBar
+          title="Before clipping on"
+          sub={[
+            charge.title,
+            `${charge.spare.label}${channel ? ` at ${channel}` : ''}`,
+            `clip on ${moment(Date.parse(charge.clipOnAt), zone, now, marks)}`,
+          ].join(' · ')}
+          onBack={onBack}
+        />
+      }
+      foot={
+        closed ? (
+          <Foot note="The timer was started. The answers stand as they were given.">
+            <Button title="Open the charge" onPress={() => router.replace(live as Href)} />
+          </Foot>
+        ) : (
+          <CheckFoot
+            charge={charge}
+            offline={offline}
+            busy={start.isPending}
+            problem={problem}
+            onStart={begin}
+            onWayOut={(way) => (way.kind === 'plan' ? router.push(way.path as Href) : setReading(true))}
+          />
+        )
+      }
+    >
+      <Columns
+        work={
+          <CheckList
+            checks={charge.checks}
+            changing={changing}
+            now={now}
+            busy={answer.isPending}
+            disabled={offline}
+            problem={answer.error ? sentenceOf(answer.error) : null}
+            closed={closed}
+            onChange={(code) => {
+              answer.reset();
+              setChanging(code);
+            }}
+            onAnswer={(code, given) =>
+              answer.mutate({ id: charge.id, code, answer: given }, { onSuccess: () => setChanging(null) })
+            }
+          />
+        }
+        side={
+          <>
+            <WhatToSet charge={charge} now={now} />
+            <StandingLine style={{ marginTop: 16 }} />
+          </>
+        }
+      />
+      {reading ? <ReadAgain charge={charge} onRead={onRead} onClose={() => setReading(false)} /> : null}
+    </Screen>
+  );
+}
+
+/** A new reading of the spare, which the numbers of the checks go by. */
+function ReadAgain({ charge, onRead, onClose }: { charge: ChargeDto; onRead: () => void; onClose: () => void }) {
+  const meters = useMeters().data ?? [];
+  const add = useAddSpareReading();
+  const initial: CheckValues = {
+    groupVolts: charge.groups.map(() => ''),
+    celsius: '',
+    meterId: charge.meterId,
+  };
+  const f = useContractForm({
+    schema: spareReadingSchemaFor({ ...charge, groupsInSeries: charge.groups.length }),
+    initial,
+    draft: `read-again.${charge.id}`,
+    send: async (output) => {
+      await add.mutateAsync({ id: charge.spare.id, ...output });
+      onRead();
+      onClose();
+    },
+  });
+  return (
+    <ReadAgainSheet
+      charge={charge}
+      form={f.form}
+      meters={meters}
+      busy={f.busy}
+      problem={f.problem}
+      wrong={f.wrong > 0 ? wrongSentence(f.wrong) : null}
+      onSend={() => void f.submit()}
+      onClose={onClose}
+    />
+  );
+}

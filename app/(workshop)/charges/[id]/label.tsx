@@ -1,0 +1,80 @@
+import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
+import { useMemo, useState } from 'react';
+import { View } from 'react-native';
+import { isProblem, sentenceOf } from '@/shared/client/api-problem';
+import { useCharge } from '@/shared/client/charges';
+import type { ChargeDto } from '@/shared/contract/charge';
+import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
+import { useFormats } from '@/shared/ui/format/formats';
+import { labelSize } from '@/shared/ui/label/label-layout';
+import { LabelSheet } from '@/shared/ui/label/label-sheet';
+import { labelOf, noLabelReason } from '@/shared/ui/label/label-words';
+import { printNow, PrintSheet } from '@/shared/ui/label/print-sheet';
+import { Button } from '@/shared/ui/primitives/button';
+import { Txt } from '@/shared/ui/primitives/txt';
+import { Foot } from '@/shared/ui/screen/foot';
+import { HeaderBar } from '@/shared/ui/screen/header-bar';
+import { Screen } from '@/shared/ui/screen/screen';
+
+export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
+
+/** The label of a proven module, to be printed and stuck on it. */
+export default function Label() {
+  const { id } = useLocalSearchParams<{ id: string }>();
+  const router = useRouter();
+  const query = useCharge(id);
+  const charge = query.data;
+  const back = () => (router.canGoBack() ? router.back() : router.replace(`/charges/${id}` as Href));
+  const why = charge ? noLabelReason(charge) : null;
+  const may = charge !== undefined && why === null;
+  return (
+    <Screen
+      single
+      header={
+        <HeaderBar title="Label" sub={charge && `${charge.title} · ${charge.spare.label} · 62 × 40 mm`} onBack={back} />
+      }
+      foot={
+        <Foot note={why ?? undefined} noteId="label-note">
+          <Button
+            title="Print the label"
+            icon="print"
+            onPress={printNow}
+            disabled={!may}
+            describedBy={why ? 'label-note' : undefined}
+          />
+        </Foot>
+      }
+    >
+      {!charge ? (
+        <ChargeMissing
+          gone={isProblem(query.error) && query.error.status === 404}
+          problem={query.isError ? sentenceOf(query.error) : null}
+          busy={query.isFetching}
+          onRetry={() => void query.refetch()}
+          onBack={back}
+        />
+      ) : may ? (
+        <Preview charge={charge} />
+      ) : null}
+    </Screen>
+  );
+}
+
+function Preview({ charge }: { charge: ChargeDto }) {
+  const { zone, marks } = useFormats();
+  const [width, setWidth] = useState(0);
+  const label = useMemo(() => labelOf(charge, zone, marks), [charge, zone, marks]);
+  return (
+    <View style={{ rowGap: 12, paddingTop: 8 }}>
+      <View onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))}>
+        {width > 0 ? <LabelSheet label={label} url={charge.labelUrl} width={width} /> : null}
+      </View>
+      <Txt kind="small" tone="ink2">
+        The code opens this charge. In the print sheet choose the label printer, 62 × 40 mm, without margins.
+      </Txt>
+      <PrintSheet widthMm={labelSize.width} heightMm={labelSize.height}>
+        <LabelSheet label={label} url={charge.labelUrl} width="62mm" />
+      </PrintSheet>
+    </View>
+  );
+}

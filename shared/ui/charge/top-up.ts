@@ -1,0 +1,44 @@
+/** Ways on to the plan screen, with what is known filled in. */
+import type { ChargeDto } from '@/shared/contract/charge';
+
+type Known = Record<string, string | number | null>;
+
+function planPath(known: Known): string {
+  const query = Object.entries(known)
+    .filter((entry): entry is [string, string | number] => entry[1] !== null)
+    .map(([name, value]) => `${name}=${encodeURIComponent(String(value))}`)
+    .join('&');
+  return `/plan?${query}`;
+}
+
+const targetOf = (charge: ChargeDto): Known => ({
+  target: charge.targetTypedVolts,
+  repair: charge.repairRef,
+  position: charge.modulePosition,
+  meter: charge.meterId,
+  celsius: charge.targetCelsius,
+  tolerance: Math.round(charge.toleranceVolts * 1e6) / 1e3,
+});
+
+/** The same spare to the same target again, from where the check found it. */
+export const topUpPath = (charge: ChargeDto): string =>
+  planPath({ spare: charge.spare.id, topUpOf: charge.id, ...targetOf(charge) });
+
+/** The same spare on another channel or way. */
+export const replanPath = (charge: ChargeDto): string => planPath({ spare: charge.spare.id, ...targetOf(charge) });
+
+/** Another spare to the same target. */
+export const otherSparePath = (charge: ChargeDto): string => planPath(targetOf(charge));
+
+/** The same as what the server is asked: how long a top-up takes from the check's own voltages. */
+export const topUpRequest = (charge: ChargeDto) => ({
+  spareId: charge.spare.id,
+  targetVolts: charge.targetTypedVolts,
+  toleranceMillivolts: Math.round(charge.toleranceVolts * 1e6) / 1e3,
+  meterId: charge.meterId,
+  packCelsius: charge.targetCelsius,
+  readyBy: null,
+  clipOnAt: null,
+  repairRef: charge.repairRef,
+  modulePosition: charge.modulePosition,
+});
