@@ -10,9 +10,7 @@ function requireNode() {
   const have = process.versions.node.split('.').map(Number);
   const differing = leastNode.findIndex((part, i) => have[i] !== part);
   if (differing >= 0 && have[differing] < leastNode[differing]) {
-    console.error(
-      `bidewell: this is Node ${process.versions.node}; ${leastNode.join('.')} or newer of the 20 line is needed.`,
-    );
+    console.error(`bidewell: this is Node ${process.versions.node}; ${leastNode.join('.')} or newer is needed.`);
     process.exit(1);
   }
 }

@@ -120,6 +120,16 @@ function splitCommonChunk(chunks, chunksByPath) {
     chunks.add(chunk);
   });
 
+  // The root layout is on every page too: from the common file it is there one round trip earlier.
+  const layout = chunksByPath.get(rootLayout);
+  if (layout.isAsync) {
+    for (const module of layout.deps) {
+      common.deps.add(module);
+      chunksByPath.set(module.path, common);
+    }
+    chunks.delete(layout);
+  }
+
   const loadedAtStart = (chunk) => !chunk || !chunk.isAsync;
   const filesOf = new Map();
   for (const [target, closure] of closures) {
