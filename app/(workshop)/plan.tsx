@@ -177,7 +177,7 @@ export default function Plan() {
                 From spare to pack
               </Txt>
             ) : null}
-            {spare ? <PlanSummary spare={spare} request={settled} dto={dto} now={now} /> : null}
+            {spare && !(refused && !wide) ? <PlanSummary spare={spare} request={settled} dto={dto} now={now} /> : null}
             {open ? (
               <PlanFields
                 typed={typed}

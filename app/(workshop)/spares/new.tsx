@@ -125,13 +125,7 @@ function Form({
             Volts at rest, read now
           </Txt>
           {type ? (
-            <ReadingFields
-              form={f.form}
-              prefix="reading."
-              groups={type.groupsInSeries}
-              floorVolts={type.floorVolts}
-              meters={meters}
-            />
+            <ReadingFields form={f.form} prefix="reading." groups={type.groupsInSeries} type={type} meters={meters} />
           ) : (
             <Txt tone="ink2">Choose the type first: it says how many groups there are.</Txt>
           )}

@@ -72,10 +72,10 @@ export function EstimateFields({
         <>
           <View style={styles.row}>
             {box('celsius', 'Module is at', '°C', 'maxVolts')}
-            {box('maxVolts', 'Charger up to', 'V', 'maxWatts')}
+            {box('maxVolts', 'Charger volts', 'V', 'maxWatts')}
           </View>
           <View style={styles.row}>
-            {box('maxWatts', 'Charger up to', 'W', 'resistanceMilliohm')}
+            {box('maxWatts', 'Charger power', 'W', 'resistanceMilliohm')}
             {box('resistanceMilliohm', 'Resistance', 'mΩ')}
           </View>
         </>

@@ -4,7 +4,6 @@ import { durationBand, duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { ampHours, clipVolts } from '../format/quantities';
 import { LevelColumn } from '../level-column/level-column';
-import { reachScale } from '../level-column/scale';
 import { FullWidth } from '../primitives/full-width';
 import { Duration } from '../primitives/num';
 import { SegmentSwitch } from '../primitives/segment-switch';
@@ -82,7 +81,11 @@ export function EstimateResult({
           stage={hanging ? 'discharging' : 'charging'}
           groups={groups}
           targetVolts={input.targetVolts}
-          scale={reachScale([input.spareVolts], [input.spareVolts], input.targetVolts)}
+          scale={{
+            kind: 'window',
+            lowVolts: Math.min(input.spareVolts, input.targetVolts) - 0.4,
+            highVolts: Math.max(input.spareVolts, input.targetVolts) + 0.15,
+          }}
           name="The spare"
           tab
         />
@@ -106,7 +109,7 @@ export function EstimateResult({
                 at: (s) => `${duration(s)} after clip-on`,
               })}
             />
-            <TimeAxis ticks={spanTicks({ toS, width, stepS: undefined })} fromS={0} toS={toS} width={width} />
+            <TimeAxis ticks={spanTicks({ toS, width })} fromS={0} toS={toS} width={width} />
           </>
         )}
       </FullWidth>

@@ -20,16 +20,20 @@ export function EstimateTrust({
 }) {
   const { marks } = useFormats();
   const doubt = doubtWords[way.dominant];
+  const rest = way.segments.filter(({ kind }) => kind === 'rest').reduce((sum, { fromS, toS }) => sum + toS - fromS, 0);
+  // Said above in the words of six numbers: nobody was asked for a meter or a measurement here.
+  const cautions = estimate.cautions.filter(({ code }) => code !== 'other-meter' && code !== 'unknown-health');
   return (
     <View style={{ rowGap: 8 }}>
       <Txt tone="ink2">
         <Span bold tone="ink">
-          Capacity and rest are guessed.
+          The capacity is guessed.
         </Span>
-        {` ${ratedAh(input.ratedAh, marks)} is off the label, taken at ${share(input.healthPercent / 100)}; the rest is taken as the usual one. Most of the band comes from ${doubt.name}.`}
+        {` ${ratedAh(input.ratedAh, marks)} is off the label, taken at ${share(input.healthPercent / 100)}. A rest of ${duration(rest)} is included. Most of the band comes from ${doubt.name}.`}
         {way.narrowsByS >= 60 ? ` ${doubt.advice} would narrow it by ${duration(way.narrowsByS)}.` : ''}
+        {' Read spare and pack with the same meter: its offset then cancels.'}
       </Txt>
-      {estimate.cautions.map((caution) => (
+      {cautions.map((caution) => (
         <Caution key={caution.text}>{caution.text}</Caution>
       ))}
     </View>

@@ -8,7 +8,7 @@ import { clock } from '../format/clock';
 import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
-import { clockTicks, spanTicks } from '../wait-ribbon/ticks';
+import { clockTicks, spanTicks, tickStep } from '../wait-ribbon/ticks';
 
 /** Volts and amps of a way against the clock, or against the time since clip-on. Loaded late: it brings the charts. */
 export default function PlanPicture({
@@ -48,7 +48,7 @@ export default function PlanPicture({
               restBand={restBand.length > 1 ? restBand : undefined}
               ticks={
                 clipOnAt === null
-                  ? spanTicks({ toS, width: fewer })
+                  ? spanTicks({ toS, width: fewer, stepS: spanStep(toS, fewer) })
                   : clockTicks({ zeroInstant: clipOnAt, fromS: 0, toS, width: fewer, zone, marks })
               }
               twin={`${heading}: the groups come to ${volts(targetVolts, marks)} at rest, ready ${at(option.totalS.p50)}, between ${at(option.totalS.p10)} and ${at(option.totalS.p90)}.`}
@@ -60,3 +60,6 @@ export default function PlanPicture({
     </View>
   );
 }
+
+/** Whole hours from two hours on: '90 min' beside '2 h' would be read twice. */
+const spanStep = (toS: number, width: number): number => Math.max(toS > 7200 ? 3600 : 0, tickStep(toS, width));

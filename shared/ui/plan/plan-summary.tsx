@@ -52,7 +52,8 @@ export function PlanSummary({
     />
   );
   const lowest = Math.min(...groups);
-  const each = dto ? Math.max(...dto.plan.groupAmpHours.map(Math.abs)) : null;
+  const needs = dto?.plan.groupAmpHours.map(Math.abs) ?? [];
+  const each = needs.length > 0 ? Math.max(...needs) : null;
   const facts = [
     ...(request
       ? [

@@ -14,12 +14,13 @@ import { TimeAxis } from '../wait-ribbon/time-axis';
 import { finishNames, wayNames } from './way-words';
 import { WayRow, wayLabel } from './way-row';
 
-/** The shared axis ends a little behind the second-slowest sensible way, so that one slow way does not press the rest together. */
+/** So many of the soonest decide how long the shared axis is; a way that is much slower runs off it. */
+const comparedWays = 5;
+
+/** Length of the axis that all ways share, s. */
 export function sharedAxisS(plan: PlanDto['plan']): number {
-  const ends = plan.options.map((option) => option.totalS.p90).sort((a, b) => a - b);
-  if (ends.length === 0) return 4 * 3600;
-  const middle = ends[Math.min(ends.length - 1, Math.ceil(ends.length * 0.7))] ?? 4 * 3600;
-  return Math.min(ends.at(-1) ?? middle, middle * 1.25) * 1.02;
+  const ends = plan.options.slice(0, comparedWays).map((option) => option.totalS.p90);
+  return ends.length === 0 ? 4 * 3600 : Math.max(...ends) * 1.04;
 }
 
 /** The first ways with those that carry a mark and the chosen one: what a decision needs. The order stays. */
@@ -63,7 +64,11 @@ export function PlanWays({
         <Txt kind="heading" heading={2}>
           Ways, soonest first
         </Txt>
-        <Txt kind="small" tone="ink2">{`from ${clock(zero, zone, marks)}, rest and check included`}</Txt>
+        <Txt kind="small" tone="ink2" nowrap>
+          {wide
+            ? `all from ${clock(zero, zone, marks)}, rest and check included`
+            : `from ${clock(zero, zone, marks)}, ${shown.length} of ${plan.options.length}`}
+        </Txt>
       </View>
       <View onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))}>
         {width === 0 ? null : (
@@ -109,6 +114,11 @@ export function PlanWays({
         />
       ) : null}
       <RuledOut plan={plan} />
+      {wide ? null : (
+        <Txt kind="small" tone="ink2" style={{ marginTop: 10 }}>
+          All times include rest and check.
+        </Txt>
+      )}
     </View>
   );
 }

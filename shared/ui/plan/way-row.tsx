@@ -22,6 +22,8 @@ function markWords(option: PlanOption, readyBy: string | null): { text: string; 
   return null;
 }
 
+const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
+
 /** The row in words, for readers. */
 export function wayLabel(option: PlanOption, readyBy: string | null): string {
   const mark = markWords(option, readyBy);
@@ -55,8 +57,10 @@ export function WayRow({
   const styles = useStyles();
   const { marks } = useFormats();
   const mark = markWords(option, readyBy);
+  // A charge over several channels has too long a name for the first line of a phone.
+  const below = wide || option.channelText.length > 10;
   const needs = [
-    ...(wide ? [option.channelText.replace(' · ', ', ')] : []),
+    ...(below ? [option.channelText.replace(' · ', ', ')] : []),
     option.busbarsOff ? 'busbars off' : 'busbars stay',
     `${duration(option.handsOnS, 'minute')} hands-on`,
     ampHours(option.ampHours, marks),
@@ -91,7 +95,7 @@ export function WayRow({
         </Txt>
       )}
       <View style={styles.grow} />
-      {wide ? null : (
+      {below ? null : (
         <Txt kind="label" nowrap>
           {option.channelText.replaceAll(' ', NBSP)}
         </Txt>
@@ -125,7 +129,7 @@ export function WayRow({
       )}
       <View style={styles.time}>
         <Txt kind="small" tone="ink2" style={styles.needs}>
-          {needs}
+          {capital(needs)}
         </Txt>
         {wide ? markText : null}
       </View>

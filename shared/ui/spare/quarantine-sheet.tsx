@@ -59,7 +59,9 @@ export function QuarantineSheet({
       }
       onClose={onClose}
     >
-      <Txt kind="label">What was seen</Txt>
+      <Txt kind="label" style={{ marginTop: 12 }}>
+        What was seen
+      </Txt>
       <ChoiceList label="What was seen" value={chosen} onChange={setChosen} outset={14} choices={seen} />
       {chosen === 'other' ? (
         <Field label="In a few words" value={words} onChangeText={setWords} maxLength={300} autoFocus />

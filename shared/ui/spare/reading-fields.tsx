@@ -1,6 +1,8 @@
 import { useWatch, type FieldPath, type FieldValues, type UseFormReturn } from 'react-hook-form';
 import { View } from 'react-native';
 import type { MeterDto } from '@/shared/contract/equipment';
+import { groupVoltsProblem, type TypeWindow } from '@/shared/contract/group-volts';
+import { readQuantity, type QuantityRule } from '@/shared/contract/quantity';
 import { FieldPair } from '../auth/form-stack';
 import { useFormats } from '../format/formats';
 import { parseNumber, typedDecimals } from '../format/parse';
@@ -12,28 +14,33 @@ import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { TypedField } from './typed-field';
 
+const voltsRule: QuantityRule = { name: 'The voltage', unit: 'V', min: 0 };
+
 /** Group voltages at rest with the meter and the temperature they were read at. The Next key walks the groups. */
 export function ReadingFields<Values extends FieldValues>({
   form,
   prefix = '',
   groups,
-  floorVolts,
+  type,
   meters,
 }: {
   form: UseFormReturn<Values, unknown, Values>;
   /** Where the reading stands inside another form: 'reading.'. */
   prefix?: string;
   groups: number;
-  floorVolts: number;
+  /** The module's limits: each voltage is judged by them as its field is left. */
+  type: TypeWindow & { floorVolts: number };
   meters: readonly MeterDto[];
 }) {
   const styles = useStyles();
   const { marks } = useFormats();
+  const { floorVolts } = type;
   const at = (name: string) => `${prefix}${name}` as FieldPath<Values>;
   const typed = ((useWatch({ control: form.control, name: at('groupVolts') }) ?? []) as string[]).slice(0, groups);
   const read = typed.map((text) => parseNumber(text ?? ''));
   const volts = read.flatMap((one) => (one.ok ? [one.value] : []));
-  const whole = volts.length === groups && groups > 0;
+  const whole =
+    volts.length === groups && groups > 0 && volts.every((value) => groupVoltsProblem(value, type) === null);
   const under = read.flatMap((one, index) => (one.ok && one.value > 0 && one.value < floorVolts ? [index] : []));
   const rough =
     whole && typed.some((text) => typedDecimals(text) < 3 && !/mv/i.test(text) && (parseOr(text) ?? 0) < 100);
@@ -43,7 +50,15 @@ export function ReadingFields<Values extends FieldValues>({
       <View style={styles.grid}>
         {Array.from({ length: groups }, (_, index) => (
           <View key={index} style={styles.cell}>
-            <TypedField form={form} name={at(`groupVolts.${index}`)} missing={`G${index + 1} is missing.`}>
+            <TypedField
+              form={form}
+              name={at(`groupVolts.${index}`)}
+              missing={`G${index + 1} is missing.`}
+              judge={(text) => {
+                const one = readQuantity(text, voltsRule);
+                return one.ok ? groupVoltsProblem(one.value, type) : null;
+              }}
+            >
               {(field) => (
                 <Field
                   label={`G${index + 1}`}
@@ -88,7 +103,7 @@ export function ReadingFields<Values extends FieldValues>({
               value={value || 'none'}
               onChange={(id) => onChange((id === 'none' ? null : id) as string)}
               options={[
-                { value: 'none', label: 'meter not known' },
+                { value: 'none', label: 'not known' },
                 ...meters.map((meter) => ({ value: meter.id, label: meter.name })),
               ]}
             />

@@ -51,13 +51,11 @@ export function ReadingsHistory({
         {readings.map((reading) => (
           <View role="listitem" key={reading.id} style={styles.row}>
             <View style={styles.words}>
-              <Txt numberOfLines={2}>
-                {day(Date.parse(reading.at))}
-                <Txt kind="small" tone="ink2">
-                  {`  ${[reading.by.name.split(' ')[0], reading.note, reading.meterId && meterName(reading.meterId)]
-                    .filter(Boolean)
-                    .join(', ')}`}
-                </Txt>
+              <Txt numberOfLines={1}>{day(Date.parse(reading.at))}</Txt>
+              <Txt kind="small" tone="ink2" numberOfLines={2}>
+                {[reading.by.name.split(' ')[0], reading.note, reading.meterId && meterName(reading.meterId)]
+                  .filter(Boolean)
+                  .join(', ')}
               </Txt>
               {reading.groupVolts.length > 3 ? (
                 <Txt kind="small" tone="ink2">
@@ -65,11 +63,16 @@ export function ReadingsHistory({
                 </Txt>
               ) : null}
             </View>
-            <Txt kind="numS" nowrap align="right">
-              {reading.groupVolts.length > 3
-                ? `${voltsNumber(Math.min(...reading.groupVolts), marks)}${EN_DASH}${voltsNumber(Math.max(...reading.groupVolts), marks)}`
-                : reading.groupVolts.map((value) => voltsNumber(value, marks)).join('  ')}
-            </Txt>
+            {(reading.groupVolts.length > 3
+              ? [
+                  `${voltsNumber(Math.min(...reading.groupVolts), marks)}${EN_DASH}${voltsNumber(Math.max(...reading.groupVolts), marks)}`,
+                ]
+              : reading.groupVolts.map((value) => voltsNumber(value, marks))
+            ).map((text, group) => (
+              <Txt key={group} kind="numS" nowrap align="right">
+                {text}
+              </Txt>
+            ))}
             <Txt kind="numS" nowrap tone="ink2" align="right" style={styles.degrees}>
               {reading.celsius === null ? '–' : celsius(reading.celsius)}
             </Txt>

@@ -1,6 +1,6 @@
 import { Circle, G, Path, Svg, Text as SvgText } from 'react-native-svg';
 import type { SpareReadingDto } from '@/shared/contract/spare';
-import { lineDecimals, voltLines } from '../charts/axis-steps';
+import { multiples } from '../charts/axis-steps';
 import { useFormats } from '../format/formats';
 import { fixed } from '../format/number';
 import { useHalo } from '../theme/surface';
@@ -42,8 +42,12 @@ export function ReadingsPicture({
   const all = values.flat();
   const pad = Math.max(0.003, (Math.max(...all) - Math.min(...all)) * 0.15);
   const [low, high] = [Math.min(...all) - pad, Math.max(...all) + pad];
-  const lines = voltLines(low, high);
-  const decimals = Math.max(2, lineDecimals(lines));
+  // Readings of a spare lie a few millivolts apart: the lines follow them down to single ones.
+  const step = [0.001, 0.002, 0.005, 0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1].find(
+    (each) => multiples(low, high, each).length <= 4,
+  );
+  const lines = multiples(low, high, step ?? 2);
+  const decimals = (step ?? 1) < 0.01 ? 3 : 2;
   const [left, right, base] = [44, width - 10, height - 24];
   const times = readings.map(({ at }) => Date.parse(at));
   const [first, last] = [times[0] ?? 0, times.at(-1) ?? 1];

@@ -2,7 +2,7 @@ import type { FieldPath, FieldValues, UseFormReturn } from 'react-hook-form';
 import { View } from 'react-native';
 import type { ModuleTypeDto } from '@/shared/contract/equipment';
 import { useFormats } from '../format/formats';
-import { ampHours, ratedAh } from '../format/quantities';
+import { ampHours } from '../format/quantities';
 import { FieldPair } from '../auth/form-stack';
 import { Field } from '../primitives/field';
 import { Select } from '../primitives/select';
@@ -44,7 +44,7 @@ export function SpareFields<Values extends FieldValues>({
             value={value || null}
             error={error}
             onBlur={onBlur}
-            options={types.map((each) => ({ value: each.id, label: `${each.name}, ${ratedAh(each.ratedAh, marks)}` }))}
+            options={types.map((each) => ({ value: each.id, label: each.name }))}
             onChange={(id) => {
               onChange(id);
               const chosen = types.find((each) => each.id === id);

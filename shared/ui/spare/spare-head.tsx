@@ -38,7 +38,10 @@ export function SpareHead({ item, now }: { item: StockItem; now: number }) {
         stage={under ? stageOf(card) : 'planned'}
         groups={
           under
-            ? columnGroups(card)
+            ? columnGroups(card).map((group) => ({
+                ...group,
+                text: many ? undefined : voltsNumber(group.volts, marks),
+              }))
             : groups.map((value) => ({
                 volts: value,
                 odd: value < spare.floorVolts,

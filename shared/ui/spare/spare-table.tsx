@@ -102,16 +102,20 @@ export function SpareTable({
             const band = capacityBandOf(spare);
             return (
               <View style={{ flexDirection: 'row', alignItems: 'center', columnGap: 12 }}>
-                {axis ? (
-                  <CapacityMark
-                    {...band}
-                    {...axis}
-                    labelAh={ratedAh.get(spare.moduleTypeId) ?? null}
-                    dashed={isCapacityGuessed(spare) || spare.capacitySource !== 'measured'}
-                    width={104}
-                  />
-                ) : null}
-                <Txt kind="numXS">{ampHoursNumber(spare.usedCapacityAh, marks)}</Txt>
+                <View style={{ width: 104, flexShrink: 0 }}>
+                  {axis ? (
+                    <CapacityMark
+                      {...band}
+                      {...axis}
+                      labelAh={ratedAh.get(spare.moduleTypeId) ?? null}
+                      dashed={isCapacityGuessed(spare) || spare.capacitySource !== 'measured'}
+                      width={104}
+                    />
+                  ) : null}
+                </View>
+                <Txt kind="numXS" align="right" style={{ width: 44 }}>
+                  {ampHoursNumber(spare.usedCapacityAh, marks)}
+                </Txt>
                 <Txt kind="small" tone="ink2" nowrap>
                   {`±${ampHoursNumber(band.high - band.likely, marks)}, ${isCapacityGuessed(spare) ? 'guessed' : sourceWords[spare.capacitySource].replace('off the ', '')}`}
                 </Txt>

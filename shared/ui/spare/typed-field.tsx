@@ -16,19 +16,28 @@ export function TypedField<Values extends FieldValues>({
   form,
   name,
   missing,
+  judge,
   children,
 }: {
   form: UseFormReturn<Values, unknown, Values>;
   name: FieldPath<Values>;
   /** The sentence where it was left empty. */
   missing?: string;
+  /** Judges what stands in a field that was left, where the form's own check has not got to it yet. */
+  judge?: (value: string) => string | null;
   children: (field: TypedFieldProps) => ReactNode;
 }) {
   const { field, fieldState } = useController({ control: form.control, name });
   const message = fieldState.error?.message;
   const value = (field.value ?? '') as string;
   const unspoken = !message || /^Invalid (input|option)/.test(message) || (value === '' && missing !== undefined);
-  const error = fieldState.error ? (unspoken ? (missing ?? 'Choose or type this.') : message) : undefined;
+  const error = fieldState.error
+    ? unspoken
+      ? (missing ?? 'Choose or type this.')
+      : message
+    : fieldState.isTouched && value !== ''
+      ? (judge?.(value) ?? undefined)
+      : undefined;
   return (
     <>
       {children({

@@ -98,10 +98,10 @@ function Form({ spare, meters, onBack }: { spare: SpareDto; meters: readonly Met
       <View style={{ rowGap: 14, paddingBottom: 16 }}>
         {last ? (
           <Txt kind="small" tone="ink2">
-            {`Before, ${age(Date.parse(last.at), zone, now)}${/day$|days$/.test(age(Date.parse(last.at), zone, now)) && !/today|yesterday/.test(age(Date.parse(last.at), zone, now)) ? ' ago' : ''}: ${last.groupVolts.map((volts) => voltsNumber(volts, marks)).join('  ')} V`}
+            {`Before, ${agoWords(age(Date.parse(last.at), zone, now))}: ${last.groupVolts.map((volts) => voltsNumber(volts, marks)).join('  ')} V`}
           </Txt>
         ) : null}
-        <ReadingFields form={f.form} groups={spare.groupsInSeries} floorVolts={spare.floorVolts} meters={meters} />
+        <ReadingFields form={f.form} groups={spare.groupsInSeries} type={spare} meters={meters} />
         <DateTimeField
           label="Read at"
           hint="empty: now"
@@ -123,3 +123,6 @@ function Form({ spare, meters, onBack }: { spare: SpareDto; meters: readonly Met
     </Screen>
   );
 }
+
+/** '12 days ago', 'yesterday' */
+const agoWords = (words: string): string => (words.endsWith('days') ? `${words} ago` : words);
