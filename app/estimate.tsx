@@ -32,7 +32,7 @@ import { Loading } from '@/shared/ui/states/loading';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
-const Picture = lazy(() => import('@/shared/ui/plan/plan-picture'));
+const Picture = lazy(async () => ({ default: (await import('@/shared/ui/plan/plan-picture')).PlanPicture }));
 
 /** Six numbers in, a time and a band out. No sign-in; reckoned on this device. */
 export default function Estimate() {

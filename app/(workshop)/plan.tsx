@@ -43,7 +43,7 @@ import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
-const PlanPicture = lazy(() => import('@/shared/ui/plan/plan-picture'));
+const PlanPicture = lazy(async () => ({ default: (await import('@/shared/ui/plan/plan-picture')).PlanPicture }));
 
 /** Numbers are reckoned again this long after the last key. */
 const settleMs = 400;

@@ -11,7 +11,7 @@ import { volts } from '../format/quantities';
 import { clockTicks, spanTicks, tickStep } from '../wait-ribbon/ticks';
 
 /** Volts and amps of a way against the clock, or against the time since clip-on. Loaded late: it brings the charts. */
-export default function PlanPicture({
+export function PlanPicture({
   heading,
   option,
   clipOnAt,
