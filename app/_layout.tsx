@@ -2,7 +2,7 @@ import { Stack, useSegments } from 'expo-router';
 import { useEffect } from 'react';
 import { ClientProvider } from '@/shared/client/client-provider';
 import { usePreferences } from '@/shared/client/preferences';
-import { useSession } from '@/shared/client/session';
+import { useOtherTabs, useSession } from '@/shared/client/session';
 import { returnTo } from '@/shared/client/session-state';
 import { useZone } from '@/shared/client/workshop';
 import { FormatsProvider } from '@/shared/ui/format/formats';
@@ -45,6 +45,7 @@ function Screens() {
   const { colors } = useTheme();
   usePageTitle(titleOf(useSegments()));
   const signedIn = Boolean(session);
+  useOtherTabs();
   const waiting = session === undefined && !beginsOpen;
 
   useEffect(() => {

@@ -148,6 +148,8 @@ function listen(socket: LiveSocket, as: 'member' | 'wall', ended: () => void): (
 export function startLive(as: 'member' | 'wall', ended: () => void = () => {}): () => void {
   let stop: (() => void) | null = null;
   let stopped = false;
+  // What was not heard before this person or wall was here says nothing of their link.
+  linkIdle();
   const open = async (attempt: number): Promise<void> => {
     try {
       const { io } = await import('socket.io-client');

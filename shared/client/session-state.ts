@@ -1,6 +1,9 @@
 /** What survives a reload of a session that the script cannot read itself (its cookies are httpOnly). */
 import { externalStore } from './external-store';
-import { recall, remember } from './storage';
+import { recall, remember, storagePrefix } from './storage';
+
+const signedIn = 'signed-in';
+export const signedInKey = storagePrefix + signedIn;
 
 export type EndedReason = 'expired' | 'disabled' | 'sign-out' | 'role-changed' | 'revoked';
 
@@ -8,8 +11,9 @@ export type EndedReason = 'expired' | 'disabled' | 'sign-out' | 'role-changed' |
 export const endedStore = externalStore<EndedReason | null>(null);
 
 /** Somebody has signed in in this browser and not signed out since. */
-export const signedInBefore = (): boolean => recall('signed-in') === '1';
-export const rememberSignedIn = (yes: boolean): void => remember('signed-in', yes ? '1' : null);
+export const signedInBefore = (): boolean => recall(signedIn) !== null;
+/** Who it is; null: nobody any more. Other tabs hear of it. */
+export const rememberSignedIn = (personId: string | null): void => remember(signedIn, personId);
 
 /** Where a person was when the session ended, to go on there after signing in; within this site only. */
 export const returnTo = {

@@ -1,4 +1,5 @@
 import { queryOptions, useQuery, type QueryClient } from '@tanstack/react-query';
+import { useEffect, useState } from 'react';
 import type { Capability, Role } from '@/shared/contract/roles';
 import type {
   ActiveSessionDto,
@@ -13,7 +14,7 @@ import { isProblem } from './api-problem';
 import { forgetDrafts } from './draft-store';
 import { queryClient } from './query-client';
 import { roots } from './query-keys';
-import { endedStore, rememberSignedIn, returnTo, signedInBefore, type EndedReason } from './session-state';
+import { endedStore, rememberSignedIn, returnTo, signedInBefore, signedInKey, type EndedReason } from './session-state';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
@@ -24,7 +25,10 @@ export const sessionQuery = () =>
     queryFn: async ({ signal }) => {
       if (!signedInBefore()) return null;
       const session = await orNull(api.get<SessionDto>('/session', { signal }), [401]);
-      if (!session) rememberSignedIn(false);
+      if (!session) rememberSignedIn(null);
+      // Somebody else signed in in another tab of this browser: its cookies are this tab's too.
+      const last = queryClient.getQueryData<SessionDto | null>([roots.session]);
+      if (last && session && last.person.id !== session.person.id) forgetOthers(queryClient);
       return session;
     },
     // Known without asking: the first screen of a visitor waits for nothing.
@@ -35,11 +39,17 @@ export const sessionQuery = () =>
 
 export const useSession = () => useQuery(sessionQuery());
 
-/** The session where one is sure to be there: inside the guarded screens. Throws elsewhere. */
+/**
+ * The session where one is sure to be there: inside the guarded screens. Throws elsewhere.
+ * Between the end of a session and the closing of the guard a screen may be drawn once more: it keeps its person.
+ */
 export function useMember(): SessionDto {
   const { data } = useSession();
-  if (!data) throw new Error('useMember outside the guarded screens');
-  return data;
+  const [kept, setKept] = useState(data);
+  if (data && data !== kept) setKept(data);
+  const member = data ?? kept;
+  if (!member) throw new Error('useMember outside the guarded screens');
+  return member;
 }
 
 /** Whether the person signed in may. The server checks again. */
@@ -55,7 +65,7 @@ const forgetOthers = (client: QueryClient): void =>
 
 function begin(client: QueryClient, session: SessionDto): void {
   const last = client.getQueryData(sessionQuery().queryKey);
-  rememberSignedIn(true);
+  rememberSignedIn(session.person.id);
   endedStore.set(null);
   // Another person, or another workshop: nothing of the last one is shown for a moment.
   if (last?.person.id !== session.person.id || last.workshop.id !== session.workshop.id) forgetOthers(client);
@@ -106,7 +116,7 @@ export const useResetPassword = () =>
 function end(client: QueryClient): void {
   const person = client.getQueryData(sessionQuery().queryKey)?.person;
   if (person) forgetDrafts(person.id);
-  rememberSignedIn(false);
+  rememberSignedIn(null);
   endedStore.set(null);
   client.setQueryData(sessionQuery().queryKey, null);
   forgetOthers(client);
@@ -138,9 +148,20 @@ export const useChangeMe = () =>
 export function sessionLost(reason: EndedReason): void {
   if (!queryClient.getQueryData(sessionQuery().queryKey)) return;
   returnTo.keep(location.pathname + location.search);
-  rememberSignedIn(false);
+  rememberSignedIn(null);
   endedStore.set(reason);
   queryClient.setQueryData(sessionQuery().queryKey, null);
+}
+
+/** Signing in or out in another tab is followed here at once. Once, around all screens. */
+export function useOtherTabs(): void {
+  useEffect(() => {
+    const heard = ({ key }: StorageEvent) => {
+      if (key === signedInKey) void queryClient.invalidateQueries({ queryKey: [roots.session] });
+    };
+    window.addEventListener('storage', heard);
+    return () => window.removeEventListener('storage', heard);
+  }, []);
 }
 
 api.on({ heard: () => {}, unheard: () => {}, sessionEnded: () => sessionLost('expired') });
