@@ -4,6 +4,7 @@ import { durationBand, duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { ampHours, clipVolts } from '../format/quantities';
 import { LevelColumn } from '../level-column/level-column';
+import { spanStep } from '../plan/span-step';
 import { FullWidth } from '../primitives/full-width';
 import { Duration } from '../primitives/num';
 import { SegmentSwitch } from '../primitives/segment-switch';
@@ -109,7 +110,12 @@ export function EstimateResult({
                 at: (s) => `${duration(s)} after clip-on`,
               })}
             />
-            <TimeAxis ticks={spanTicks({ toS, width })} fromS={0} toS={toS} width={width} />
+            <TimeAxis
+              ticks={spanTicks({ toS, width, stepS: spanStep(toS, width) })}
+              fromS={0}
+              toS={toS}
+              width={width}
+            />
           </>
         )}
       </FullWidth>

@@ -8,7 +8,8 @@ import { clock } from '../format/clock';
 import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
-import { clockTicks, spanTicks, tickStep } from '../wait-ribbon/ticks';
+import { clockTicks, spanTicks } from '../wait-ribbon/ticks';
+import { spanStep } from './span-step';
 
 /** Volts and amps of a way against the clock, or against the time since clip-on. Loaded late: it brings the charts. */
 export function PlanPicture({
@@ -60,6 +61,3 @@ export function PlanPicture({
     </View>
   );
 }
-
-/** Whole hours from two hours on: '90 min' beside '2 h' would be read twice. */
-const spanStep = (toS: number, width: number): number => Math.max(toS > 7200 ? 3600 : 0, tickStep(toS, width));

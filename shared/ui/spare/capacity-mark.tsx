@@ -47,7 +47,10 @@ export function CapacityMark({
   const top = ticks ? 22 : 0;
   const mid = top + height / 2;
   const box = { x: x(low), w: Math.max(4, x(high) - x(low)), y: mid - height * 0.27, h: height * 0.54 };
-  const step = [1, 2, 5, 10, 20, 50, 100, 200].find((each) => (each / (toAh - fromAh)) * width >= 56) ?? 500;
+  const step =
+    [1, 2, 5, 10, 20, 50, 100, 200].find(
+      (each) => (each / (toAh - fromAh)) * width >= 56 && (toAh - fromAh) / each <= 8,
+    ) ?? 500;
   const labelX = labelAh === null ? null : x(labelAh);
   return (
     <Svg

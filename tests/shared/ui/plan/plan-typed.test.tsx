@@ -1,0 +1,57 @@
+import { describe, expect, it } from 'vitest';
+import { shownOptions } from '@/shared/ui/plan/plan-ways';
+import { emptyPlan, fieldOf, requestOf } from '@/shared/ui/plan/plan-typed';
+
+const at = { zone: 'Europe/Amsterdam', today: '2026-06-09', now: Date.parse('2026-06-09T11:31:00Z') };
+const typed = { ...emptyPlan, spareId: 's1', targetVolts: '3,968 V' };
+
+describe('what is typed into a plan', () => {
+  it('reads a comma and a pasted unit, and takes a time as one of the workshop’s zone', () => {
+    const { request, errors } = requestOf({ ...typed, readyDay: '2026-06-09', readyTime: '1815' }, at);
+    expect(errors).toEqual({});
+    // 18:15 in Amsterdam in June is 16:15 UTC.
+    expect(request).toMatchObject({ targetVolts: 3.968, readyBy: '2026-06-09T16:15:00.000Z', clipOnAt: null });
+  });
+
+  it.each([
+    ['39.68', /over 5.V.*point in the wrong place/],
+    ['3968', /looks like millivolts/],
+    ['', /missing/],
+    ['abc', /is no number/],
+  ])('refuses “%s” as the pack’s volts with a sentence at its field', (targetVolts, sentence) => {
+    const { request, errors } = requestOf({ ...typed, targetVolts }, at);
+    expect(request).toBeNull();
+    expect(errors.targetVolts).toMatch(sentence);
+  });
+
+  it('refuses a time that is over, at the field it was typed into', () => {
+    const { request, errors } = requestOf({ ...typed, readyDay: '2026-06-09', readyTime: '09:00' }, at);
+    expect(request).toBeNull();
+    expect(errors.readyTime).toBe('That time is over. Choose a later one.');
+  });
+
+  it('maps the server’s instants to the fields they are typed in', () => {
+    expect([fieldOf('readyBy'), fieldOf('clipOnAt'), fieldOf('meterId')]).toEqual(['readyTime', 'clipTime', 'meterId']);
+  });
+});
+
+describe('ways shown at first', () => {
+  const way = (id: string, marks: object = {}) =>
+    ({ id, soonest: false, soonestBusbarsStay: false, ...marks }) as Parameters<typeof shownOptions>[0][number];
+  const options = [
+    way('a', { soonest: true }),
+    way('b'),
+    way('c'),
+    way('d'),
+    way('e', { soonestBusbarsStay: true }),
+    way('f'),
+  ];
+
+  it('are the first three with every marked and the chosen one, in their order', () => {
+    expect(shownOptions(options, 3, 'f').map(({ id }) => id)).toEqual(['a', 'b', 'c', 'e', 'f']);
+  });
+
+  it('are all where a button would hide only one', () => {
+    expect(shownOptions(options.slice(0, 4), 3, null)).toHaveLength(4);
+  });
+});
