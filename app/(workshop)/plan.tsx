@@ -119,6 +119,7 @@ export default function Plan() {
   const wrong = tried ? Object.keys(errors).length : 0;
   const acts = (
     <PlanActs
+      holder={holderOf(keep.error, (id) => router.push(`/charges/${id}` as Href))}
       problem={keep.error ? sentenceOf(keep.error) : wrong > 0 ? wrongSentence(wrong) : null}
       note={
         offline
@@ -324,6 +325,14 @@ function useOthers(spare: SpareDto | null, request: PlanRequest | null, all: rea
   return candidates
     .map((other, index) => ({ spare: other, dto: plans[index]?.data ?? null, likely: likely(index) }))
     .sort((a, b) => a.likely - b.likely);
+}
+
+/** The charge that holds the spare already, as the refusal names it. */
+function holderOf(error: unknown, open: (chargeId: string) => void) {
+  if (!isConflict(error)) return null;
+  const present = error.present as { chargeId?: string; title?: string } | undefined;
+  const { chargeId, title } = present ?? {};
+  return chargeId && title ? { title, onOpen: () => open(chargeId) } : null;
 }
 
 function RefusedFoot({

@@ -6,6 +6,7 @@ import { Txt } from '../primitives/txt';
 /** The next step of a plan, the quiet one beside it, and over them why it cannot be taken. */
 export function PlanActs({
   problem,
+  holder,
   note,
   disabled,
   busy,
@@ -15,6 +16,8 @@ export function PlanActs({
 }: {
   /** Red and read out. */
   problem: string | null;
+  /** The charge that has taken the spare meanwhile, and the way to it. */
+  holder: { title: string; onOpen: () => void } | null;
   note: string | null;
   disabled: boolean;
   busy: boolean;
@@ -31,6 +34,7 @@ export function PlanActs({
             {problem}
           </Txt>
         ) : null}
+        {holder ? <Link kind="small" tight title={`Open the charge ${holder.title}`} onPress={holder.onOpen} /> : null}
         {note ? (
           <Txt kind="small" tone="ink2" style={{ marginBottom: 6 }}>
             {note}
