@@ -28,6 +28,10 @@ const wholeZod = {
     "Pulls all of zod into the page. Import 'zod/mini', of which the web build keeps only what is used, and '@hookform/resolvers/standard-schema'.",
 };
 
+const leftOutHead = {
+  regex: '^expo-router/head$',
+  message: "Left out of the web build (server/cli/web/leave-out.cjs). Set the title by the stack's options.",
+};
 const leftOutRouter = {
   regex: '^expo-router$',
   importNames: ['Tabs', 'ExperimentalStack', 'Sitemap', 'useSitemap'],
@@ -201,6 +205,7 @@ export default defineConfig([
         wholeMathjs,
         wholeZod,
         leftOutRouter,
+        leftOutHead,
         {
           regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?client(/|$)`,
           message:
@@ -224,6 +229,7 @@ export default defineConfig([
         wholeMathjs,
         wholeZod,
         leftOutRouter,
+        leftOutHead,
         {
           regex: own('server', 'tests'),
           message:

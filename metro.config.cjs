@@ -17,7 +17,7 @@ config.cacheVersion = createHash('sha256')
 
 // What the web app never imports need not be crawled or watched.
 const root = __dirname.replace(/[/\\^$.*+?()[\]{}|]/g, '\\$&');
-const ours = new RegExp(`^${root}/(tests|server|data|dist[^/]*|\\.tsbuild|\\.git)/.*`);
+const ours = new RegExp(`^${root}/(tests|server/(?!cli/web/)|data|dist[^/]*|\\.tsbuild|\\.git)/.*`);
 config.resolver.blockList = [config.resolver.blockList ?? [], ours].flat();
 
 // The first load carries what its screen shows and no more. In development the packages are taken as they are.

@@ -15,7 +15,7 @@ const forbidden: [what: string, modules: RegExp][] = [
   ['mathjs', /node_modules\/mathjs\//],
   ['zod as a whole', /node_modules\/zod\//],
   ['pdfkit', /node_modules\/pdfkit\//],
-  ['the server', /^server\//],
+  ['the server', /^server\/(?!cli\/web\/)/],
   [
     'packages of the server',
     /node_modules\/(express|typeorm|better-sqlite3|socket\.io|pino|jsonwebtoken|bcryptjs|helmet)\//,

@@ -1,8 +1,9 @@
 import fs from 'node:fs';
 import path from 'node:path';
 import type { Browser } from 'playwright-core';
-import { afterAll, beforeAll, expect, test } from 'vitest';
+import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { fromRoot } from '@/server/cli/tools.mjs';
+import { leftOutOfIndex } from '@/server/cli/web/leave-out.cjs';
 import { firstLoadBudgetKib, measureFirstLoads, type FirstLoad } from '../bench/first-load';
 import { describeInBrowser, openBrowser, viewports, visit } from '../support/browser';
 import { launch, type Launched } from '../support/launch';
@@ -59,6 +60,25 @@ describeInBrowser('the built web app', () => {
     }
     // The list of modules beside the build is not for visitors.
     expect((await fetch(`${server.url}/.chunks.json`)).status).toBe(404);
+  });
+});
+
+describe('what is left out of the framework', () => {
+  test('is asked for by no module of the build through the index it is left out of', () => {
+    const lists = JSON.parse(fs.readFileSync(fromRoot('dist/.chunks.json'), 'utf8')) as Record<string, string[]>;
+    const modules = [...new Set(Object.values(lists).flat())].filter((module) =>
+      /^node_modules\/.*\.[jt]sx?$/.test(module),
+    );
+    expect(modules.length).toBeGreaterThan(500);
+    // CommonJS reads a part off the index when it is called: react_native_1.Switch, require("react-native").Switch.
+    const asks = new RegExp(
+      `(?:\\b\\w*react_native\\w*|require\\(["']react-native["']\\))\\.(${leftOutOfIndex.join('|')})\\b`,
+    );
+    const asking = modules.flatMap((module) => {
+      const found = asks.exec(fs.readFileSync(fromRoot(module), 'utf8'));
+      return found ? [`${module}: ${found[0]}`] : [];
+    });
+    expect(asking).toEqual([]);
   });
 });
 

@@ -10,7 +10,7 @@ const chunkModule = require('@expo/metro-config/build/serializer/serializeChunks
 const nameModule = require('@expo/metro-config/build/serializer/computeChunkFilenames');
 
 /** A further file in a page load counts as much as this many characters of code. */
-const requestWeight = 12_000;
+const requestWeight = 6_000;
 
 const codeLength = (module) => module.output.reduce((total, { data }) => total + (data.code?.length ?? 0), 0);
 
