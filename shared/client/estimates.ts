@@ -22,5 +22,20 @@ export const useEstimate = (input: EstimateInput | null) =>
     placeholderData: (last) => last,
   });
 
-/** Fetches the planner ahead of the first numbers; call it after the first paint. */
-export const preloadEstimate = (): void => void import('@/calc/plan/estimate').catch(() => undefined);
+let asked = false;
+
+/**
+ * Fetches the planner (32 KiB) with the first touch or key on the page, ahead of the first whole numbers: the first
+ * load does not carry it, and nobody waits for it either.
+ */
+export function preloadEstimate(): void {
+  if (asked) return;
+  asked = true;
+  const events = ['pointerdown', 'keydown', 'focusin'] as const;
+  const fetchIt = () => {
+    for (const event of events) document.removeEventListener(event, fetchIt, { capture: true });
+    // Not reached now: the first estimate asks again and says so.
+    void import('@/calc/plan/estimate').catch(() => undefined);
+  };
+  for (const event of events) document.addEventListener(event, fetchIt, { capture: true, passive: true });
+}

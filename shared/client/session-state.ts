@@ -34,7 +34,7 @@ export const endedSentence = (reason: EndedReason): string =>
     disabled: 'A manager has switched this access off. Ask a manager of your workshop.',
     'sign-out': 'You were signed out from another device. What you typed is kept.',
     'role-changed': 'Your role was changed. Sign in again; what you typed is kept.',
-    revoked: 'This access was taken back. Ask a manager of your workshop.',
+    revoked: 'This session was ended, as after a new password. Sign in again; what you typed is kept.',
   })[reason];
 
 /** The address last typed on this device, so that signing in again needs the password only. */
