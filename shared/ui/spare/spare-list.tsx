@@ -25,7 +25,7 @@ export function SpareList({
         if (!first) return null;
         const count = `${own.length} ${own.length === 1 ? 'module' : 'modules'}`;
         return (
-          <View key={typeId} role="list" aria-label={first.typeName}>
+          <View key={typeId}>
             <View
               style={{
                 flexDirection: 'row',
@@ -44,11 +44,13 @@ export function SpareList({
                   : count}
               </Txt>
             </View>
-            {own.map((item) => (
-              <View role="listitem" key={item.spare.id}>
-                <SpareRow item={item} now={now} onOpen={() => onOpen(item.spare.id)} />
-              </View>
-            ))}
+            <View role="list" aria-label={first.typeName}>
+              {own.map((item) => (
+                <View role="listitem" key={item.spare.id}>
+                  <SpareRow item={item} now={now} onOpen={() => onOpen(item.spare.id)} />
+                </View>
+              ))}
+            </View>
           </View>
         );
       })}
