@@ -62,10 +62,10 @@ function WaitsPage() {
   const now = useNow(60_000);
   const weeks: Period = params.weeks && params.weeks in periods ? (params.weeks as Period) : '8';
   const today = dayOf(now, zone);
-  // Whole weeks from Monday on, and the present one.
+  // Weeks from Monday on; the present one is the last of them.
   const weekday = (new Date(`${today}T00:00:00Z`).getUTCDay() + 6) % 7;
   const query = {
-    from: addDays(today, -weekday - 7 * Number(weeks)),
+    from: addDays(today, -weekday - 7 * (Number(weeks) - 1)),
     to: today,
     ...(params.type ? { moduleTypeId: params.type } : {}),
     ...(params.charger ? { chargerId: params.charger } : {}),
@@ -144,7 +144,7 @@ function WaitsPage() {
               {data.charges < fewCharges ? (
                 <Txt tone="ink2">{`Only ${data.charges} charges: middle values say little under ${fewCharges}.`}</Txt>
               ) : null}
-              <WaitFigures waits={data} />
+              <WaitFigures waits={data} today={today} />
               <Suspense fallback={<View style={{ height: 240 }} />}>
                 <WeekChart waits={data} onCsv={csv} />
                 <Rule />

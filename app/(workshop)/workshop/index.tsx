@@ -476,7 +476,11 @@ function WallList({ titled }: PartProps) {
         <WallRows walls={walls.data ?? []} now={now} mayTakeBack={mayRevoke} onTakeBack={setAsked} />
       )}
       <ProblemLine text={revoke.error ? sentenceOf(revoke.error) : null} />
-      <Button look="line" title="Approve another wall" onPress={() => go('/approve')} />
+      <Button
+        look="line"
+        title={walls.data?.length ? 'Approve another wall' : 'Approve a wall'}
+        onPress={() => go('/approve')}
+      />
       <ConfirmSheet
         open={asked !== null}
         title={`Take back ${asked?.name ?? ''}?`}

@@ -1,7 +1,9 @@
 import { View } from 'react-native';
 import type { ChannelDto, ChargerDto, MeterDto } from '@/shared/contract/equipment';
 import { useFormats } from '../format/formats';
-import { plannedAmps, clipVolts } from '../format/quantities';
+import { NBSP } from '../format/marks';
+import { shortest } from '../format/number';
+import { plannedAmps } from '../format/quantities';
 import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
@@ -45,7 +47,13 @@ export function ChargersTable({
           phone: 'detail',
           cell: (row) => plannedAmps(row.maxAmps, marks),
         },
-        { key: 'volts', title: 'Up to', numeric: true, phone: 'detail', cell: (row) => clipVolts(row.maxVolts, marks) },
+        {
+          key: 'volts',
+          title: 'Up to',
+          numeric: true,
+          phone: 'detail',
+          cell: (row) => `${shortest(row.maxVolts, 2, marks)}${NBSP}V`,
+        },
         {
           key: 'direction',
           title: 'Direction',
@@ -97,6 +105,8 @@ export function ChargersTable({
                   <View>
                     <Link
                       tight
+                      kind="small"
+                      align="right"
                       title="edit"
                       label={`Edit ${row.charger.name} with channel ${row.name}`}
                       onPress={() => onEdit(row.charger)}

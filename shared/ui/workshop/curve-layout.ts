@@ -23,7 +23,7 @@ const TENTHS = Array.from({ length: 10 }, (_, i) => i / 10);
  * cut it off.
  */
 export function worthShare({ curve }: Pick<ChemistryParameters, 'curve'>, soc: number): number {
-  const [low, high] = [curve.volts[0] ?? 0, curve.volts.at(-1) ?? 0];
+  const [low, high] = [voltsAtSoc(curve, 0), voltsAtSoc(curve, 1)];
   const volts = voltsAtSoc(curve, soc);
   const at = (v: number) => socAtVolts(curve, Math.min(high, Math.max(low, v)));
   return at(volts + WORTH_VOLTS / 2) - at(volts - WORTH_VOLTS / 2);

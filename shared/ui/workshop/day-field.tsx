@@ -76,6 +76,8 @@ const useStyles = makeStyles((theme) => ({
   input: {
     height: '100%',
     width: '100%',
+    minWidth: 0,
+    boxSizing: 'border-box',
     paddingHorizontal: 14,
     backgroundColor: 'transparent',
     borderWidth: 0,

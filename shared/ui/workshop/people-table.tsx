@@ -5,6 +5,7 @@ import { EN_DASH } from '../format/marks';
 import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
+import { useBreakpoint } from '../theme/use-breakpoint';
 import { roleWords } from './role-words';
 
 type Row = { key: string; person: PersonDto } | { key: string; invitation: InvitationDto };
@@ -29,6 +30,7 @@ export function PeopleTable({
   onRecall: (invitation: InvitationDto) => void;
 }) {
   const { zone, marks } = useFormats();
+  const phone = useBreakpoint() === 'phone';
   const seen = (person: PersonDto): string => {
     if (person.disabled) return 'disabled';
     if (!person.lastSeenAt) return EN_DASH;
@@ -77,11 +79,11 @@ export function PeopleTable({
         {
           key: 'seen',
           title: 'Seen',
-          phone: 'none',
+          phone: 'detail',
           share: 1.2,
           cell: (row) =>
             'person' in row
-              ? seen(row.person)
+              ? `${phone && !row.person.disabled && row.person.lastSeenAt ? 'seen ' : ''}${seen(row.person)}`
               : row.invitation.lapsed
                 ? 'lapsed'
                 : `lapses ${moment(Date.parse(row.invitation.expiresAt), zone, now, marks)}`,
@@ -96,10 +98,19 @@ export function PeopleTable({
                 width: 64,
                 cell: (row: Row) =>
                   'person' in row ? (
-                    <Link tight title="edit" label={`Edit ${row.person.name}`} onPress={() => onEdit(row.person)} />
+                    <Link
+                      tight
+                      kind="small"
+                      align="right"
+                      title="edit"
+                      label={`Edit ${row.person.name}`}
+                      onPress={() => onEdit(row.person)}
+                    />
                   ) : (
                     <Link
                       tight
+                      kind="small"
+                      align="right"
                       title="recall"
                       label={`Recall the invitation of ${row.invitation.email}`}
                       onPress={() => onRecall(row.invitation)}

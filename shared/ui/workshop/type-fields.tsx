@@ -47,6 +47,8 @@ export function TypeFields({ form, readOnly }: { form: TypedForm<TypeTexts>; rea
           {number('chargeLimitVolts', 'V')}
           {number('dischargeLimitVolts', 'V')}
           {number('floorVolts', 'V', 'under it: never charged')}
+        </FieldGrid>
+        <FieldGrid two>
           {number('maxChargeAmps', 'A')}
           {number('maxDischargeAmps', 'A')}
           {number('minChargeCelsius', '°C')}
@@ -58,8 +60,6 @@ export function TypeFields({ form, readOnly }: { form: TypedForm<TypeTexts>; rea
           {number('shelfVolts', 'V', 'spares rest at this')}
           {number('selfDischargePercentPerMonth', '%', 'a month')}
           {number('linkMilliohm', 'mΩ', 'busbars between two groups')}
-        </FieldGrid>
-        <FieldGrid two>
           {number('resistanceMilliohm', 'mΩ', 'of one group, at 25 °C')}
           <BoundSelect
             form={form}

@@ -11,7 +11,7 @@ import { typedNumber } from './numbers-typed';
 export type TypeTexts = Record<keyof ModuleTypeInput, string> & { baseRev: number };
 
 export const resistanceNames: Record<(typeof resistanceKinds)[number], string> = {
-  'pulse-0.5s': 'Pulse, half a second',
+  'pulse-0.5s': 'Pulse, 0.5 s',
   'pulse-10s': 'Pulse, 10 s',
   'ac-1khz': 'AC, 1 kHz',
   long: 'Long, settled',

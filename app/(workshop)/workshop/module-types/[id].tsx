@@ -12,13 +12,13 @@ import { useFormats } from '@/shared/ui/format/formats';
 import { Button } from '@/shared/ui/primitives/button';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
-import { Columns } from '@/shared/ui/screen/columns';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';
 import { FormScreen, Restored } from '@/shared/ui/workshop/form-screen';
 import { whoMay } from '@/shared/ui/workshop/may-change';
 import { RemoveThing } from '@/shared/ui/workshop/remove-thing';
+import { TypeColumns } from '@/shared/ui/workshop/type-columns';
 import { TypeCurve } from '@/shared/ui/workshop/type-curve';
 import { TypeFields } from '@/shared/ui/workshop/type-fields';
 import { copiedTexts, typeFieldNames, typeTexts, typeWords, type TypeTexts } from '@/shared/ui/workshop/type-form';
@@ -128,7 +128,7 @@ function TypeForm({
     >
       {gate.may ? null : <Txt tone="ink2">{whoMay(gate)}</Txt>}
       <Restored restored={f.restored} onAfresh={() => f.clear(type ? typeTexts(type, marks) : initial)} />
-      {wide ? <ProblemLine text={theirs ? null : (f.problem ?? wrong)} /> : null}
+      {wide && !theirs && (f.problem ?? wrong) ? <ProblemLine text={f.problem ?? wrong} /> : null}
       {theirs ? (
         <ChangedMeanwhile
           what="This module type"
@@ -141,11 +141,7 @@ function TypeForm({
           }}
         />
       ) : null}
-      <Columns
-        work={<TypeFields form={f.form} readOnly={!gate.may} />}
-        side={<TypeCurve form={f.form} />}
-        order={['work', 'side']}
-      />
+      <TypeColumns form={<TypeFields form={f.form} readOnly={!gate.may} />} picture={<TypeCurve form={f.form} />} />
       {gate.may && type ? (
         <View style={{ rowGap: 12 }}>
           {wide ? null : copyButton}
