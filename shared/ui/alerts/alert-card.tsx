@@ -12,7 +12,7 @@ import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { Surface } from '../theme/surface';
 import { radius, stroke } from '../theme/tokens';
-import { lookOf, stepOf, whose } from './alert-words';
+import { lookOf, stepOf, titleOf, whose } from './alert-words';
 
 /** An alert that is open: what was seen, what to check first, and who has it. */
 export function AlertCard({
@@ -60,7 +60,7 @@ export function AlertCard({
       <View style={styles.middle}>
         <View style={styles.words}>
           <Txt kind="numM" heading={2}>
-            {alert.title}
+            {titleOf(alert)}
           </Txt>
           <Txt>{alert.seen}</Txt>
         </View>
@@ -113,7 +113,7 @@ export function AlertCard({
       </View>
     </>
   );
-  const label = `${word}, ${alert.title}`;
+  const label = `${word}, ${titleOf(alert)}`;
   if (alert.level === 'tell')
     return (
       <Surface tone="sheet" role="region" aria-label={label} style={styles.told}>

@@ -9,7 +9,7 @@ import { stages } from '../stage/stages';
 import { makeStyles } from '../theme/make-styles';
 import { radius, stroke } from '../theme/tokens';
 import { useTheme } from '../theme/theme';
-import { lookOf, outcomeOf } from './alert-words';
+import { lookOf, outcomeOf, titleOf } from './alert-words';
 
 /** An alert that is settled: what it was, and what came of it. The row opens its charge. */
 export function AlertRow({ alert, now, onGo }: { alert: AlertDto; now: number; onGo: (path: string) => void }) {
@@ -24,7 +24,7 @@ export function AlertRow({ alert, now, onGo }: { alert: AlertDto; now: number; o
     <PressableLink
       href={live}
       onGo={() => onGo(live)}
-      label={`${word}, ${alert.title}, ${at(alert.raisedAt)}. ${outcomeOf(alert, at)}`}
+      label={`${word}, ${titleOf(alert)}, ${at(alert.raisedAt)}. ${outcomeOf(alert, at)}`}
       style={({ pressed }) => [styles.row, pressed && styles.pressed]}
     >
       <View
@@ -37,7 +37,7 @@ export function AlertRow({ alert, now, onGo }: { alert: AlertDto; now: number; o
         <StageGlyph stage={mark} size={14} tone={look.onColor} />
       </View>
       <View style={styles.words}>
-        <Txt bold>{`${word}, ${alert.title}`}</Txt>
+        <Txt bold>{`${word}, ${titleOf(alert)}`}</Txt>
         <Txt kind="small" tone="ink2">
           {[alert.seen, outcomeOf(alert, at)].filter(Boolean).join(' ')}
         </Txt>

@@ -18,6 +18,9 @@ const looks: Record<AlertKind, AlertLook> = {
 };
 export const lookOf = (alert: AlertDto): AlertLook => looks[alert.kind];
 
+/** 'R-2406 at B2': the tag beside it says already that it is a look-in. */
+export const titleOf = (alert: AlertDto): string => alert.title.replace(/^Look[- ]in at /, '');
+
 /** Whose it is: 'nobody has it', 'yours', 'for Hella'; once taken who has it. */
 export function whose(alert: AlertDto, personId: string): string {
   if (alert.takenBy) return alert.takenBy.id === personId ? 'you have it' : `${firstName(alert.takenBy.name)} has it`;

@@ -29,6 +29,6 @@ export function SoundTool({
 export const soundWords: Record<SoundState, string> = {
   on: 'sound on',
   off: 'sound off',
-  muted: 'sound muted until you tap',
+  muted: 'sound muted',
   none: 'no sound on this device',
 };

@@ -18,11 +18,14 @@ export function BenchCallOut({
   card,
   at,
   lagLimitVolts,
+  beside = false,
   onGo,
 }: {
   card: ChargeCardDto;
   at: CardClock;
   lagLimitVolts?: number;
+  /** It shares its row with another one: the desk. */
+  beside?: boolean;
   onGo: (path: string) => void;
 }) {
   const styles = useStyles();
@@ -35,7 +38,7 @@ export function BenchCallOut({
     <CallOut
       tone={red ? 'red' : 'amber'}
       label={`${card.title}, ${red ? 'overdue' : stageWords(card)}`}
-      style={styles.box}
+      style={beside && styles.beside}
     >
       <PressableLink href={live} onGo={() => onGo(live)} style={styles.open} label={`Open ${card.title}`}>
         <View style={styles.head}>
@@ -63,7 +66,7 @@ export function BenchCallOut({
 }
 
 const useStyles = makeStyles(() => ({
-  box: { flexGrow: 1, flexShrink: 1, flexBasis: 0, minWidth: 0, justifyContent: 'space-between' },
+  beside: { flexGrow: 1, flexShrink: 1, flexBasis: 0, minWidth: 0, justifyContent: 'space-between' },
   open: { marginBottom: 10 },
   head: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'center', columnGap: 12 },
   middle: {

@@ -43,7 +43,7 @@ export function BenchList({
         <View>
           <View style={wide ? styles.beside : styles.under}>
             {calls.map((card) => (
-              <BenchCallOut key={card.id} card={card} at={at} lagLimitVolts={lagLimitVolts} onGo={onGo} />
+              <BenchCallOut key={card.id} card={card} at={at} lagLimitVolts={lagLimitVolts} beside={wide} onGo={onGo} />
             ))}
           </View>
           {wide && running.length > 0 ? (

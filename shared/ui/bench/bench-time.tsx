@@ -32,12 +32,26 @@ export function BenchTime({
   if (card.stage === 'ready') return <Txt kind="numM">To be fitted</Txt>;
   if (card.stage === 'check-due' && card.checkDueAt) {
     const waits = (at.now - Date.parse(card.checkDueAt)) / 1000;
+    const rested = card.currentEndAt
+      ? `rested ${duration((at.now - Date.parse(card.currentEndAt)) / 1000, 'minute')}`
+      : '';
     return (
       <View style={styles.row}>
         <Duration seconds={Math.max(0, waits)} precision="minute" kind={kind} tone={tone} />
-        <Txt
-          tone={quiet}
-        >{`the check waits${card.currentEndAt ? `, rested ${duration((at.now - Date.parse(card.currentEndAt)) / 1000, 'minute')}` : ''}`}</Txt>
+        {stacked ? (
+          <View>
+            <Txt bold tone={tone} nowrap style={styles.tight}>
+              the check waits
+            </Txt>
+            <Txt tone={quiet} nowrap style={styles.tight}>
+              {rested}
+            </Txt>
+          </View>
+        ) : (
+          <Txt tone={quiet} style={styles.line}>
+            {['the check waits', rested].filter(Boolean).join(', ')}
+          </Txt>
+        )}
       </View>
     );
   }

@@ -32,7 +32,7 @@ export function ReadingLog({
   const { zone, marks } = useFormats();
   const [all, setAll] = useState(false);
   const readings = [...charge.readings].sort((a, b) => b.at.localeCompare(a.at));
-  const shown = all ? readings : readings.slice(0, 6);
+  const shown = all ? readings : readings.slice(0, readingsShown);
   if (readings.length === 0) return null;
   return (
     <View>
@@ -65,18 +65,24 @@ export function ReadingLog({
   );
 }
 
+/** More are shown on demand. */
+const eventsShown = 8;
+const readingsShown = 6;
+
 /** What happened to the charge, latest first, with who did it. */
 export function EventLog({ charge, now }: { charge: ChargeDto; now: number }) {
   const styles = useStyles();
   const { zone, marks } = useFormats();
+  const [all, setAll] = useState(false);
   const events = [...charge.events].sort((a, b) => b.at.localeCompare(a.at));
   if (events.length === 0) return null;
+  const shown = all ? events : events.slice(0, eventsShown);
   return (
     <View>
       <Txt kind="heading" heading={2}>
         What happened
       </Txt>
-      {events.map((event) => (
+      {shown.map((event) => (
         <View key={event.id} style={styles.row}>
           <Txt kind="small" tone="ink2" nowrap style={styles.time}>
             {moment(Date.parse(event.at), zone, now, marks)}
@@ -86,6 +92,9 @@ export function EventLog({ charge, now }: { charge: ChargeDto; now: number }) {
           </Txt>
         </View>
       ))}
+      {events.length > shown.length ? (
+        <Link title={`All ${events.length} entries`} onPress={() => setAll(true)} />
+      ) : null}
     </View>
   );
 }

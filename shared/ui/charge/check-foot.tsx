@@ -1,13 +1,13 @@
 import type { ChargeDto } from '@/shared/contract/charge';
 import { Button } from '../primitives/button';
-import { Txt } from '../primitives/txt';
-import { ButtonRow, Foot } from '../screen/foot';
+import { ButtonRow } from '../screen/foot';
 import { wayOut, type WayOut } from './check-way-out';
+import { useNextStep, type NextStepPlaces } from './next-step-box';
 
 const noteId = 'checks-note';
 
 /** The one next step: clip on, or the way out where it is ruled out. The reason stands above it. */
-export function CheckFoot({
+export function useCheckFoot({
   charge,
   offline,
   busy,
@@ -22,22 +22,14 @@ export function CheckFoot({
   problem: string | null;
   onStart: () => void;
   onWayOut: (way: WayOut) => void;
-}) {
+}): NextStepPlaces {
   const way = wayOut(charge);
   const why = charge.startBlockedBy ?? (offline ? 'Clipping on needs the connection.' : null);
-  return (
-    <Foot
-      noteId={noteId}
-      note={
-        problem ? (
-          <Txt kind="label" tone="alarm" role="alert">
-            {problem}
-          </Txt>
-        ) : (
-          (why ?? undefined)
-        )
-      }
-    >
+  return useNextStep({
+    problem,
+    note: why,
+    noteId,
+    children: (
       <ButtonRow>
         <Button
           title={way ? 'Clip on' : 'Clip on and start the timer'}
@@ -50,6 +42,6 @@ export function CheckFoot({
         />
         {way ? <Button title={way.title} onPress={() => onWayOut(way)} grow /> : null}
       </ButtonRow>
-    </Foot>
-  );
+    ),
+  });
 }

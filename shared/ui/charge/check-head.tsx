@@ -65,6 +65,13 @@ function twinOf(verdicts: readonly (GroupVerdict | null)[]): string {
 }
 
 const useStyles = makeStyles(() => ({
-  row: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'flex-start', columnGap: 12 },
+  row: {
+    flexDirection: 'row',
+    justifyContent: 'space-between',
+    alignItems: 'flex-start',
+    columnGap: 12,
+    // On the desk numbers and picture stay together.
+    maxWidth: 460,
+  },
   inside: { marginTop: 22 },
 }));

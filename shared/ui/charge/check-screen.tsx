@@ -14,9 +14,7 @@ import { Button } from '../primitives/button';
 import { Caution, StandingLine } from '../primitives/call-out';
 import type { FieldVerdict } from '../primitives/field-frame';
 import { Link } from '../primitives/link';
-import { Txt } from '../primitives/txt';
 import { Columns } from '../screen/columns';
-import { Foot } from '../screen/foot';
 import { HeaderBar } from '../screen/header-bar';
 import { Screen } from '../screen/screen';
 import { makeStyles } from '../theme/make-styles';
@@ -25,6 +23,7 @@ import { BoundField } from './bound-field';
 import { judgeTyped, type CheckValues } from './check-form';
 import { CheckHead } from './check-head';
 import { verdictWords } from './check-words';
+import { useNextStep, type NextStepPlaces } from './next-step-box';
 import { MeterSelect } from './read-again-sheet';
 import { TopUpCallOut } from './top-up-call-out';
 
@@ -71,6 +70,7 @@ export function CheckScreen(props: CheckScreenProps) {
   const early = due !== null && now < due;
   const all = verdicts.every((one) => one !== null);
   const outside = verdicts.some((one) => one?.within === false);
+  const next = useSaveStep(props, all, outside);
   return (
     <Screen
       header={
@@ -82,7 +82,7 @@ export function CheckScreen(props: CheckScreenProps) {
           onBack={props.onBack}
         />
       }
-      foot={<CheckFoot {...props} all={all} outside={outside} />}
+      foot={next.foot}
     >
       <Columns
         work={
@@ -94,6 +94,7 @@ export function CheckScreen(props: CheckScreenProps) {
                 ? `The rest is over at ${moment(due, zone, now, marks)}, in ${duration((due - now) / 1000, 'minute')}. A check before then counts, and the log says that it was early.`
                 : null
             }
+            other={charge.meterId !== null && meterId !== charge.meterId}
             offset={meter && meter.offsetMillivolts !== 0 ? meter.offsetMillivolts / 1000 : null}
           />
         }
@@ -103,6 +104,7 @@ export function CheckScreen(props: CheckScreenProps) {
               <TopUpCallOut groups={verdicts.filter((one) => one !== null)} topUp={null} ruledOut={null} />
             ) : null}
             <StandingLine />
+            {next.side}
           </View>
         }
       />
@@ -117,11 +119,14 @@ function Work({
   verdicts,
   early,
   offset,
+  other,
 }: CheckScreenProps & {
   verdicts: readonly (GroupVerdict | null)[];
   early: string | null;
   /** What is taken off each reading, V. */
   offset: number | null;
+  /** Another meter than the pack's. */
+  other: boolean;
 }) {
   const styles = useStyles();
   const at = useBreakpoint();
@@ -131,7 +136,6 @@ function Work({
     const verdict = verdicts[group];
     return verdict ? { inside: verdict.within, text: verdictWords(verdict) } : null;
   };
-  const other = meters.length > 0 && charge.meterId !== null;
   return (
     <View style={styles.stack}>
       {early ? <Caution>{early}</Caution> : null}
@@ -165,57 +169,45 @@ function Work({
 }
 
 /** In: it is ready. Out: the top-up. The one next step, and why it is not open yet. */
-function CheckFoot({
-  all,
-  outside,
-  offline,
-  busy,
-  problem,
-  wrong,
-  form,
-  onSave,
-  onTopUp,
-  charge,
-}: CheckScreenProps & { all: boolean; outside: boolean }) {
+function useSaveStep(
+  { offline, busy, problem, wrong, form, onSave, onTopUp, charge }: CheckScreenProps,
+  all: boolean,
+  outside: boolean,
+): NextStepPlaces {
   const styles = useStyles();
+  const count = charge.groups.length;
   const why = offline
     ? 'Saving the check needs the connection. What is typed is kept.'
     : all
       ? null
-      : `All ${charge.groups.length === 1 ? 'of it' : `${charge.groups.length} groups`} decide. Type each with three decimals.`;
+      : `${count === 1 ? 'The group decides. Type it' : count === 2 ? 'Both groups decide. Type each' : `All ${count} groups decide. Type each`} with three decimals.`;
   const again = () => {
     charge.groups.forEach((_, group) => form.setValue(`groupVolts.${group}`, '', { shouldDirty: true }));
     form.setFocus('groupVolts.0');
   };
   const says = problem ?? wrong;
-  return (
-    <Foot
-      noteId={noteId}
-      note={
-        says ? (
-          <Txt kind="label" tone="alarm" role="alert">
-            {says}
-          </Txt>
-        ) : (
-          (why ?? undefined)
-        )
-      }
-    >
-      <Button
-        title={all && outside ? 'Plan the top-up' : all ? 'Save it: in tolerance' : 'Save the check'}
-        onPress={all && outside ? onTopUp : onSave}
-        busy={busy}
-        disabled={offline}
-        describedBy={why || says ? noteId : undefined}
-      />
-      {all && outside ? (
-        <View style={styles.links}>
-          <Link title="Measure again" onPress={again} />
-          <Link title="Save it, plan later" onPress={onSave} disabled={offline || busy} align="right" />
-        </View>
-      ) : null}
-    </Foot>
-  );
+  return useNextStep({
+    problem: says,
+    note: why,
+    noteId,
+    children: (
+      <>
+        <Button
+          title={all && outside ? 'Plan the top-up' : all ? 'Save it: in tolerance' : 'Save the check'}
+          onPress={all && outside ? onTopUp : onSave}
+          busy={busy}
+          disabled={offline}
+          describedBy={why || says ? noteId : undefined}
+        />
+        {all && outside ? (
+          <View style={styles.links}>
+            <Link title="Measure again" onPress={again} />
+            <Link title="Save it, plan later" onPress={onSave} disabled={offline || busy} align="right" />
+          </View>
+        ) : null}
+      </>
+    ),
+  });
 }
 
 const useStyles = makeStyles(() => ({

@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { View } from 'react-native';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { clock, moment } from '../format/clock';
 import { useFormats } from '../format/formats';
@@ -60,13 +61,15 @@ export function ClipOnSheet({
       <Txt tone="ink2">
         {`${channelsOf(charge) || 'It'} is kept for it from then. The timer starts with the checks at the bench, not by itself.`}
       </Txt>
-      <DateTimeField
-        label="Clip on at"
-        value={value}
-        onChange={setValue}
-        today={dayOf(now, zone)}
-        error={tried || problem ? error : undefined}
-      />
+      <View style={{ marginTop: 12 }}>
+        <DateTimeField
+          label="Clip on at"
+          value={value}
+          onChange={setValue}
+          today={dayOf(now, zone)}
+          error={tried || problem ? error : undefined}
+        />
+      </View>
     </BottomSheet>
   );
 }

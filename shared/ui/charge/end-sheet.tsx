@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { View } from 'react-native';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ConfirmSheet } from '../primitives/confirm-sheet';
 import { Field } from '../primitives/field';
@@ -80,13 +81,15 @@ export function EndSheet({
       onClose={onClose}
     >
       {words.field ? (
-        <Field
-          label={words.field}
-          value={text}
-          onChangeText={setText}
-          kind={kind === 'shelve' ? 'label' : 'text'}
-          maxLength={kind === 'shelve' ? 30 : 300}
-        />
+        <View style={{ marginTop: 12 }}>
+          <Field
+            label={words.field}
+            value={text}
+            onChangeText={setText}
+            kind={kind === 'shelve' ? 'label' : 'text'}
+            maxLength={kind === 'shelve' ? 30 : 300}
+          />
+        </View>
       ) : null}
       {problem ? (
         <Txt kind="label" tone="alarm" role="alert">

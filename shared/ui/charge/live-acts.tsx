@@ -3,6 +3,7 @@ import type { ChargeDto } from '@/shared/contract/charge';
 import { Button } from '../primitives/button';
 import { Txt } from '../primitives/txt';
 import { ButtonRow, Foot } from '../screen/foot';
+import { touch } from '../theme/tokens';
 import { isFlowing, waitsForSwap } from './card-model';
 
 export type LiveAct =
@@ -88,29 +89,38 @@ export interface LiveActsProps {
   onAct: (act: LiveAct) => void;
 }
 
+/** More letters than these beside each other would break a button's words on a phone. */
+const lettersInRow = 32;
+
 /** The acts as buttons: in the foot of the phone, in the head of the desk. */
 function Buttons({ charge, offline, busy, onAct, small = false }: LiveActsProps & { small?: boolean }) {
   const acts = actsOf(charge);
-  return (
-    <ButtonRow>
-      {(small ? [...acts].reverse() : acts).map(({ act, title }) => {
-        const off = offline && !worksOffline.includes(act);
-        return (
-          <Button
-            key={act}
-            title={title}
-            look={act === acts[0]?.act ? 'primary' : 'line'}
-            size={small ? 'small' : 'normal'}
-            grow={!small && act === acts[0]?.act}
-            busy={busy && act === 'resume'}
-            disabled={off}
-            describedBy={off ? liveNoteId : undefined}
-            onPress={() => onAct(act)}
-          />
-        );
-      })}
-    </ButtonRow>
-  );
+  const [first, ...others] = acts;
+  const button = ({ act, title }: ActWord, grow: boolean) => {
+    const off = offline && !worksOffline.includes(act);
+    return (
+      <Button
+        key={act}
+        title={title}
+        look={act === first?.act ? 'primary' : 'line'}
+        size={small ? 'small' : 'normal'}
+        grow={grow}
+        busy={busy && act === 'resume'}
+        disabled={off}
+        describedBy={off ? liveNoteId : undefined}
+        onPress={() => onAct(act)}
+      />
+    );
+  };
+  if (small) return <ButtonRow>{[...acts].reverse().map((one) => button(one, false))}</ButtonRow>;
+  if (first && others.length > 0 && acts.reduce((sum, { title }) => sum + title.length, 0) > lettersInRow)
+    return (
+      <View style={{ rowGap: touch.gap }}>
+        {button(first, false)}
+        <ButtonRow>{others.map((one) => button(one, true))}</ButtonRow>
+      </View>
+    );
+  return <ButtonRow>{acts.map((one) => button(one, one.act === first?.act))}</ButtonRow>;
 }
 
 export const liveNoteId = 'live-note';

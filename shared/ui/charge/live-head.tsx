@@ -13,7 +13,7 @@ import { isFlowing, isToCome, leftS, markOf, readyOf, stageWords, type CardClock
 /** What comes next by the clock, at the right of the stage's line. */
 function coming(charge: ChargeDto, at: (instant: string) => string): string {
   if (isFlowing(charge) && charge.stage !== 'tapering' && charge.taperAt) return `taper about ${at(charge.taperAt)}`;
-  if (isFlowing(charge) && charge.currentEndAt) return `current ends about ${at(charge.currentEndAt)}`;
+  if (isFlowing(charge) && charge.currentEndAt) return `ends about ${at(charge.currentEndAt)}`;
   if (charge.stage === 'resting' && charge.checkDueAt) return `check at ${at(charge.checkDueAt)}`;
   if (isToCome(charge)) return `clip on at ${at(charge.clipOnAt)}`;
   if (charge.stage === 'held' && charge.heldAt) return `since ${at(charge.heldAt)}`;

@@ -27,6 +27,18 @@ function lagWords(charge: ChargeDto): { lags: string; ends: string } | null {
   };
 }
 
+/** The current has done its part: nothing more is brought in. */
+const isOver = (charge: ChargeDto): boolean =>
+  charge.startedAt !== null && !isFlowing(charge) && charge.stage !== 'held';
+
+/** 'Still to bring in' */
+function chargeWords(charge: ChargeDto): string {
+  const down = charge.direction === 'discharge';
+  if (isOver(charge)) return down ? 'Taken out' : 'Brought in';
+  if (charge.startedAt === null) return down ? 'To take out' : 'To bring in';
+  return down ? 'Still to take out' : 'Still to bring in';
+}
+
 /**
  * The groups as they stand, the target, and what is still to bring in.
  *
@@ -48,6 +60,7 @@ export function LiveLevels({
   const left = Math.max(0, charge.plannedAh - charge.deliveredAh);
   const lag = lagWords(charge);
   const begun = charge.startedAt !== null;
+  const over = isOver(charge);
   return (
     <View>
       <View style={stacked ? styles.stack : styles.row}>
@@ -77,12 +90,14 @@ export function LiveLevels({
           </View>
           <View>
             <Txt kind="small" tone="ink2">
-              {begun ? (down ? 'Still to take out' : 'Still to bring in') : down ? 'To take out' : 'To bring in'}
+              {chargeWords(charge)}
             </Txt>
-            <Num value={ampHoursNumber(left, marks)} unit="Ah" />
+            <Num value={ampHoursNumber(over ? charge.deliveredAh : left, marks)} unit="Ah" />
             {begun ? (
               <Txt kind="small" tone="ink2">
-                {`${ampHoursNumber(charge.deliveredAh, marks)} of ${ampHoursNumber(charge.plannedAh, marks)} Ah ${down ? 'out' : 'in'}`}
+                {over
+                  ? `of ${ampHoursNumber(charge.plannedAh, marks)} Ah planned`
+                  : `${ampHoursNumber(charge.deliveredAh, marks)} of ${ampHoursNumber(charge.plannedAh, marks)} Ah ${down ? 'out' : 'in'}`}
               </Txt>
             ) : null}
           </View>

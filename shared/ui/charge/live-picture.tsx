@@ -9,15 +9,25 @@ import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
 import { clockTicks } from '../wait-ribbon/ticks';
 import { cardRibbon } from './card-drawings';
-import type { CardClock } from './card-model';
+import { movedMs, type CardClock } from './card-model';
+
+/**
+ * The plan's trace on the clock of the picture. A stored option counts from the clip-on, a running charge from its first
+ * current; one that waits moves with the clock.
+ */
+function tracedFrom(charge: ChargeDto, at: CardClock) {
+  const { trace, currentStartS } = charge.option;
+  const shift = charge.startedAt === null ? movedMs(charge, at) / 1000 : -currentStartS;
+  return trace.map((point) => ({ ...point, s: point.s + shift })).filter((point) => point.s >= 0);
+}
 
 /** Volts and amps of the plan with the readings on it. Loaded after the screen, since it brings the charts. */
 export function LivePicture({ charge, at }: { charge: ChargeDto; at: CardClock }) {
   const { zone, marks } = useFormats();
   const [width, setWidth] = useState(0);
   const zero = Date.parse(charge.startedAt ?? charge.clipOnAt);
-  const { trace } = charge.option;
   const ribbon = cardRibbon(charge, at, zero);
+  const trace = tracedFrom(charge, at);
   const toS = Math.max(trace.at(-1)?.s ?? 0, ribbon.toS);
   const count = Math.max(1, charge.groups.length);
   const readings = charge.readings

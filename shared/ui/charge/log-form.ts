@@ -48,6 +48,9 @@ export function logOf(reading: ReadingDto, groups: number, zone: string, marks: 
   };
 }
 
+/** Where the form keeps that nothing was typed at all: no field is to blame, and leaving one says nothing of it. */
+export const nothingTyped = 'nothing';
+
 /** While current flows a group may stand this far over its limit at the clips, V; beyond it is a slip. As on the server. */
 const underCurrentVolts = 0.5;
 
@@ -100,7 +103,7 @@ export const logSchema = ({
       (groupVolts ?? null) === null &&
       open.length === values.groupVolts.length
     )
-      issue('Type at least one number that was read.', 'terminalVolts');
+      issue('Type at least one number that was read.', nothingTyped);
     groupVolts?.forEach((volts, group) => {
       if (volts <= window.chargeLimitVolts + underCurrentVolts) return;
       const problem = groupVoltsProblem(volts, window);

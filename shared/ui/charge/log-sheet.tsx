@@ -18,9 +18,9 @@ import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
 import { BoundField } from './bound-field';
 import { isFlowing } from './card-model';
-import type { LogValues } from './log-form';
+import { nothingTyped, type LogValues } from './log-form';
 import { OddCallOut } from './odd-call-out';
-import { oddReading, type OddContext, type OddReading } from './odd-reading';
+import { expectedNow, oddReading, type OddContext, type OddReading } from './odd-reading';
 
 export interface LogSheetProps {
   charge: ChargeDto;
@@ -51,10 +51,13 @@ export function LogSheet(props: LogSheetProps) {
   const { zone, marks } = useFormats();
   const [odd, setOdd] = useState<OddReading | null>(null);
   const { control } = form;
+  const nothing = (useFormState({ control }).errors as Record<string, { message?: string } | undefined>)[nothingTyped]
+    ?.message;
+  const says = nothing ?? problem ?? wrong;
   const look = () => setOdd(correcting ? null : oddReading(form.getValues(), charge, context));
-  const send = () => {
-    const found = correcting ? null : oddReading(form.getValues(), charge, context);
-    // What is odd is said before it is sent; said once, a second press sends it.
+  const send = async () => {
+    // A number that cannot be is said at its field; what can be and is odd is asked about before it is sent.
+    const found = correcting || !(await form.trigger()) ? null : oddReading(form.getValues(), charge, context);
     if (found && found.seen !== odd?.seen) setOdd(found);
     else onSend();
   };
@@ -64,7 +67,12 @@ export function LogSheet(props: LogSheetProps) {
     setOdd(null);
   };
   const title = correcting ? 'Correct a reading' : 'Log a reading';
-  const expected = charge.expected;
+  const expected = expectedNow(charge);
+  const shown = [
+    expected.volts === null ? '' : clipVolts(expected.volts, marks),
+    expected.amps === null ? '' : amps(expected.amps, marks),
+    expected.celsius === null ? '' : celsius(expected.celsius),
+  ].filter(Boolean);
   return (
     <BottomSheet
       open
@@ -74,9 +82,9 @@ export function LogSheet(props: LogSheetProps) {
       scrimCloses={false}
       actions={
         <>
-          {problem || wrong ? (
+          {says ? (
             <Txt kind="label" tone="alarm" role="alert">
-              {problem ?? wrong}
+              {says}
             </Txt>
           ) : null}
           {odd ? (
@@ -87,7 +95,7 @@ export function LogSheet(props: LogSheetProps) {
           ) : (
             <Button
               title={correcting ? 'Put it right' : offline ? 'Keep it on this device' : 'Log it'}
-              onPress={send}
+              onPress={() => void send()}
               busy={busy}
             />
           )}
@@ -142,10 +150,10 @@ export function LogSheet(props: LogSheetProps) {
           <OddCallOut odd={odd} charge={charge} typed={form.getValues()} />
         </View>
       ) : null}
-      {correcting || !expected ? null : (
+      {correcting || shown.length === 0 ? null : (
         <View style={styles.foot}>
           <Txt kind="small" tone="ink2">
-            {`Expected ${clipVolts(expected.terminalVolts, marks)}, ${amps(Math.abs(expected.amps), marks)}, ${celsius(expected.celsius)}`}
+            {`Expected ${shown.join(', ')}`}
           </Txt>
           {charge.nextLookInAt ? (
             <Txt kind="small" tone="ink2" nowrap>

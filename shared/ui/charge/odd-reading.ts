@@ -1,6 +1,6 @@
 /** A reading that the plan does not explain: what was seen, and what to check before it is believed. Pure. */
 import type { ChargeDto } from '@/shared/contract/charge';
-import { clock, moment } from '../format/clock';
+import { moment } from '../format/clock';
 import type { LocaleMarks } from '../format/marks';
 import {
   amps as ampsWords,
@@ -44,6 +44,31 @@ export interface OddContext {
   marks: LocaleMarks;
 }
 
+export interface ExpectedNow {
+  /** At the clips; null while nothing flows. */
+  volts: number | null;
+  amps: number | null;
+  celsius: number | null;
+}
+
+/** What the charger and the module should show at this moment, by the reckoning. */
+export function expectedNow(charge: ChargeDto): ExpectedNow {
+  const moved = charge.option.steps[charge.stepIndex]?.groupIndexes ?? [];
+  const clips = moved.map((group) => charge.groups[group]?.clipVolts ?? null).filter((volts) => volts !== null);
+  const way = charge.option.steps[charge.stepIndex]?.way ?? charge.way;
+  const sum = clips.reduce((total, volts) => total + volts, 0);
+  const flows = isFlowing(charge) && clips.length === moved.length && clips.length > 0;
+  return {
+    volts: flows ? (way === 'paralleled' ? sum / clips.length : sum) : null,
+    amps: flows && charge.amps !== null ? Math.abs(charge.amps) : null,
+    celsius: charge.expected?.celsius ?? null,
+  };
+}
+
+/** Beyond these nobody asks what is odd: the sentence at the field says what is wrong with the number. */
+const underCurrentVolts = 0.5;
+const mostTimesPlanned = 2;
+
 const value = (text: string): number | null => {
   const read = parseNumber(text);
   return read.ok ? read.value : null;
@@ -72,8 +97,8 @@ function oddTemperature(typed: LogValues, charge: ChargeDto, { maxChargeCelsius 
       beside: 'It is too warm to be charged on.',
       checkFirst: 'whether it rises further. Hold the charge and let it cool.',
     };
-  const expected = charge.expected?.celsius;
-  if (expected === undefined || typed.at.trim() !== '' || celsius - expected <= oddKelvin) return null;
+  const expected = expectedNow(charge).celsius;
+  if (expected === null || typed.at.trim() !== '' || celsius - expected <= oddKelvin) return null;
   return {
     ...odd,
     seen: `${celsiusWords(celsius)} is ${celsiusWords(celsius - expected)} warmer than expected.`,
@@ -92,7 +117,13 @@ const median = (values: readonly number[]): number => {
 function oddGroupVolts(typed: LogValues, charge: ChargeDto, context: OddContext): OddReading | null {
   const { lagLimitVolts, zone, now, marks } = context;
   const seen = typed.groupVolts.map(value);
-  if (seen.some((one) => one === null) || seen.length !== charge.groups.length || seen.length === 0) return null;
+  const most = charge.chargeLimitVolts + underCurrentVolts;
+  if (
+    seen.some((one) => one === null || one > most || one < 0) ||
+    seen.length !== charge.groups.length ||
+    seen.length === 0
+  )
+    return null;
   const off = charge.groups.map((group, index) => seen[index]! - (group.clipVolts ?? group.volts));
   const common = off.length > 2 ? median(off) : 0;
   const group = off.reduce(
@@ -107,11 +138,11 @@ function oddGroupVolts(typed: LogValues, charge: ChargeDto, context: OddContext)
     .at(-1);
   const last = before?.groupVolts?.[group];
   const clips = value(typed.terminalVolts);
-  const expected = charge.expected?.terminalVolts;
+  const expected = expectedNow(charge).volts;
   const silent =
     charge.way === 'terminals' &&
     clips !== null &&
-    expected !== undefined &&
+    expected !== null &&
     Math.abs(clips - expected) < Math.abs(off[group]!) / 2;
   return {
     field: `groupVolts.${group}`,
@@ -132,9 +163,10 @@ function oddGroupVolts(typed: LogValues, charge: ChargeDto, context: OddContext)
 
 function oddCurrent(typed: LogValues, charge: ChargeDto, { marks }: OddContext): OddReading | null {
   const seen = value(typed.amps);
-  if (seen === null || !charge.expected || !isFlowing(charge)) return null;
+  const expected = expectedNow(charge).amps;
+  if (seen === null || expected === null) return null;
   const size = Math.abs(seen);
-  const expected = Math.abs(charge.expected.amps);
+  if (size > charge.option.amps * mostTimesPlanned) return null;
   if (Math.abs(size - expected) <= Math.max(oddAmps, oddAmpsShare * charge.option.amps)) return null;
   const channel = channelsOf(charge) || 'the charger';
   const none = size < 0.05;
@@ -150,16 +182,19 @@ function oddCurrent(typed: LogValues, charge: ChargeDto, { marks }: OddContext):
   };
 }
 
-function oddClips(typed: LogValues, charge: ChargeDto, { zone, marks }: OddContext): OddReading | null {
+function oddClips(typed: LogValues, charge: ChargeDto, { marks }: OddContext): OddReading | null {
   const seen = value(typed.terminalVolts);
-  if (seen === null || !charge.expected) return null;
-  const groups = charge.way === 'terminals' ? charge.groups.length : 1;
-  const off = seen - charge.expected.terminalVolts;
+  const expected = expectedNow(charge).volts;
+  if (seen === null || expected === null) return null;
+  const way = charge.option.steps[charge.stepIndex]?.way ?? charge.way;
+  const groups = way === 'terminals' ? charge.groups.length : 1;
+  if (seen < 0 || seen > groups * (charge.chargeLimitVolts + underCurrentVolts)) return null;
+  const off = seen - expected;
   if (Math.abs(off) <= clipVoltsPerGroup * groups) return null;
   return {
     field: 'terminalVolts',
     again: 'Read the clips again',
-    seen: `${clipVolts(seen, marks)} at the clips is ${clipVolts(Math.abs(off), marks)} ${off < 0 ? 'under' : 'over'} what was expected at ${clock(Date.parse(charge.expected.at), zone, marks)}.`,
+    seen: `${clipVolts(seen, marks)} at the clips is ${clipVolts(Math.abs(off), marks)} ${off < 0 ? 'under' : 'over'} what was expected.`,
     beside: '',
     checkFirst: 'the clips and their leads, then the current, then the set voltage.',
     group: null,

@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { View } from 'react-native';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { clock } from '../format/clock';
 import { useFormats } from '../format/formats';
@@ -50,19 +51,21 @@ export function OffSinceSheet({
       }
     >
       <Txt tone="ink2">The rest counts from then. Bidewell switches nothing: look that it is off.</Txt>
-      <TimeField
-        label="Switched off at"
-        value={text}
-        onChangeText={setText}
-        error={tried && at === null ? noTimeSentence : (problem ?? undefined)}
-        hint={
-          reckoned !== null && reckoned <= now
-            ? `By the reckoning it ended ${clock(reckoned, zone, marks)}.`
-            : undefined
-        }
-        onSubmit={confirm}
-        autoFocus
-      />
+      <View style={{ marginTop: 12 }}>
+        <TimeField
+          label="Switched off at"
+          value={text}
+          onChangeText={setText}
+          error={tried && at === null ? noTimeSentence : (problem ?? undefined)}
+          hint={
+            reckoned !== null && reckoned <= now
+              ? `By the reckoning it ended ${clock(reckoned, zone, marks)}.`
+              : undefined
+          }
+          onSubmit={confirm}
+          autoFocus
+        />
+      </View>
     </BottomSheet>
   );
 }

@@ -1,3 +1,4 @@
+import { View } from 'react-native';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ampHoursNumber, clipVolts } from '../format/quantities';
 import { useFormats } from '../format/formats';
@@ -91,13 +92,15 @@ export function StopSheet({
         ]}
       />
       {chosen === other ? (
-        <Field
-          label="The reason"
-          value={words}
-          onChangeText={(text) => onDraft({ ...draft, words: text })}
-          maxLength={300}
-          autoFocus
-        />
+        <View style={{ marginTop: 10, marginBottom: 4 }}>
+          <Field
+            label="The reason"
+            value={words}
+            onChangeText={(text) => onDraft({ ...draft, words: text })}
+            maxLength={300}
+            autoFocus
+          />
+        </View>
       ) : null}
       {stop ? (
         <CheckBox

@@ -1,4 +1,5 @@
 /** Ways on to the plan screen, with what is known filled in. */
+import type { ChargePlan, PlanOption } from '@/calc/plan-types';
 import type { ChargeDto } from '@/shared/contract/charge';
 
 type Known = Record<string, string | number | null>;
@@ -42,3 +43,14 @@ export const topUpRequest = (charge: ChargeDto) => ({
   repairRef: charge.repairRef,
   modulePosition: charge.modulePosition,
 });
+
+/** The soonest way that ends within the tolerance, or why there is none; both null while it is reckoned. */
+export function soonestTopUp(plan: ChargePlan | undefined): { option: PlanOption | null; ruledOut: string | null } {
+  if (!plan) return { option: null, ruledOut: null };
+  const option = plan.options.find((one) => one.soonest) ?? plan.options.find((one) => one.withinTolerance) ?? null;
+  if (option) return { option, ruledOut: null };
+  return {
+    option: null,
+    ruledOut: plan.refusals[0]?.text ?? 'No free way brings all groups inside at once. The plan shows what there is.',
+  };
+}

@@ -21,13 +21,15 @@ export function GroupStrip({
   onGo: (group: number) => void;
 }) {
   const styles = useStyles();
+  // Rows of equal length where that can be.
+  const inRow = count % 5 === 0 ? 5 : 4;
   return (
     <View style={styles.strip} role="list" aria-label="Groups">
       {Array.from({ length: count }, (_, group) => {
         const value = (values[group] ?? '').trim();
         const outside = verdictOf?.(group)?.inside === false;
         return (
-          <View key={group} role="listitem" style={styles.cell}>
+          <View key={group} role="listitem" style={[styles.cell, { width: `${100 / inRow}%` }]}>
             <Pressable
               role="button"
               aria-label={`Group ${group + 1}, ${value === '' ? 'open' : value}${outside ? ', outside' : ''}`}
@@ -48,8 +50,8 @@ export function GroupStrip({
 }
 
 const useStyles = makeStyles((theme) => ({
-  strip: { flexDirection: 'row', flexWrap: 'wrap', gap: 6 },
-  cell: { flexGrow: 1, flexBasis: 64, maxWidth: 96 },
+  strip: { flexDirection: 'row', flexWrap: 'wrap', rowGap: 6, marginHorizontal: -3 },
+  cell: { paddingHorizontal: 3 },
   box: {
     minHeight: 48,
     alignItems: 'center',

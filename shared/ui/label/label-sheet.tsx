@@ -25,7 +25,16 @@ export function LabelSheet({ label, url, width }: { label: LabelInput; url: stri
       height={height}
       viewBox={`0 0 ${labelSize.width} ${labelSize.height}`}
       role="img"
-      aria-label={[label.title, label.spare, label.position, label.line, label.ready].filter(Boolean).join(', ')}
+      aria-label={[
+        'Label with the QR code of the charge',
+        label.title,
+        label.spare,
+        label.position,
+        label.line,
+        label.ready,
+      ]
+        .filter(Boolean)
+        .join(', ')}
     >
       <Rect width={labelSize.width} height={labelSize.height} fill={paper} />
       <G transform={`translate(${qr.x} ${qr.y}) scale(${qr.size / code.side})`}>

@@ -12,9 +12,10 @@ import type { ChargeDto, CheckCode } from '@/shared/contract/charge';
 import { spareReadingSchemaFor } from '@/shared/contract/spare';
 import { channelsOf, isToCome } from '@/shared/ui/charge/card-model';
 import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
-import { CheckFoot } from '@/shared/ui/charge/check-foot';
+import { useCheckFoot } from '@/shared/ui/charge/check-foot';
 import { CheckList } from '@/shared/ui/charge/check-list';
 import type { CheckValues } from '@/shared/ui/charge/check-form';
+import { useNextStep } from '@/shared/ui/charge/next-step-box';
 import { ReadAgainSheet } from '@/shared/ui/charge/read-again-sheet';
 import { WhatToSet } from '@/shared/ui/charge/what-to-set';
 import { clock, moment } from '@/shared/ui/format/clock';
@@ -23,7 +24,6 @@ import { Button } from '@/shared/ui/primitives/button';
 import { StandingLine } from '@/shared/ui/primitives/call-out';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Columns } from '@/shared/ui/screen/columns';
-import { Foot } from '@/shared/ui/screen/foot';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 
@@ -90,6 +90,21 @@ function Sheet({
       },
     );
   };
+  const clipOn = useCheckFoot({
+    charge,
+    offline,
+    busy: start.isPending,
+    problem,
+    onStart: begin,
+    onWayOut: (way) => (way.kind === 'plan' ? router.push(way.path as Href) : setReading(true)),
+  });
+  const over = useNextStep({
+    problem: null,
+    note: 'The timer was started. The answers stand as they were given.',
+    noteId: 'checks-over',
+    children: <Button title="Open the charge" onPress={() => router.replace(live as Href)} />,
+  });
+  const next = closed ? over : clipOn;
   const channel = channelsOf(charge);
   return (
     <Screen
@@ -104,22 +119,7 @@ function Sheet({
           onBack={onBack}
         />
       }
-      foot={
-        closed ? (
-          <Foot note="The timer was started. The answers stand as they were given.">
-            <Button title="Open the charge" onPress={() => router.replace(live as Href)} />
-          </Foot>
-        ) : (
-          <CheckFoot
-            charge={charge}
-            offline={offline}
-            busy={start.isPending}
-            problem={problem}
-            onStart={begin}
-            onWayOut={(way) => (way.kind === 'plan' ? router.push(way.path as Href) : setReading(true))}
-          />
-        )
-      }
+      foot={next.foot}
     >
       <Columns
         work={
@@ -144,6 +144,7 @@ function Sheet({
           <>
             <WhatToSet charge={charge} now={now} />
             <StandingLine style={{ marginTop: 16 }} />
+            {next.side}
           </>
         }
       />

@@ -17,7 +17,7 @@ import { isOutside, type LiveAct } from '@/shared/ui/charge/live-acts';
 import { LiveScreen } from '@/shared/ui/charge/live-screen';
 import type { LiveSheet } from '@/shared/ui/charge/live-sheets';
 import { noStopDraft } from '@/shared/ui/charge/stop-sheet';
-import { topUpPath, topUpRequest } from '@/shared/ui/charge/top-up';
+import { soonestTopUp, topUpPath, topUpRequest } from '@/shared/ui/charge/top-up';
 import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
@@ -105,11 +105,7 @@ function Live({
       sheet={sheet}
       stopDraft={stopDraft}
       waiting={queue.waiting}
-      topUp={
-        isOutside(charge)
-          ? { option: plan.data?.plan.options[0] ?? null, ruledOut: plan.data?.plan.refusals[0]?.text ?? null }
-          : null
-      }
+      topUp={isOutside(charge) ? soonestTopUp(plan.data?.plan) : null}
       onBack={onBack}
       onGo={go}
       onAct={act}

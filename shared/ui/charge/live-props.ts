@@ -1,0 +1,34 @@
+import type { PlanOption } from '@/calc/plan-types';
+import type { ChargeDto } from '@/shared/contract/charge';
+import type { ModuleTypeDto } from '@/shared/contract/equipment';
+import type { PersonDto } from '@/shared/contract/people';
+import type { CardClock } from './card-model';
+import type { LiveAct } from './live-acts';
+import type { ChargeActs, LiveSheet, LiveSheetsProps } from './live-sheets';
+import type { WaitingReading } from './waiting-readings';
+
+/** What the live screen and its parts show and do. */
+export interface LiveScreenProps {
+  charge: ChargeDto;
+  at: CardClock;
+  /** The link is down: when the figures were told. */
+  knownAt: number | null;
+  lagLimitVolts: number | undefined;
+  type: ModuleTypeDto | undefined;
+  people: readonly PersonDto[] | undefined;
+  mayHandOver: boolean;
+  acts: ChargeActs;
+  sheet: LiveSheet | null;
+  stopDraft: LiveSheetsProps['stopDraft'];
+  waiting: readonly WaitingReading[];
+  /** After a check outside the tolerance: the soonest way to put it right. */
+  topUp: { option: PlanOption | null; ruledOut: string | null } | null;
+  onBack: () => void;
+  onGo: (path: string) => void;
+  onAct: (act: LiveAct) => void;
+  onSheet: (sheet: LiveSheet | null) => void;
+  onRemoveWaiting: (key: string) => void;
+}
+
+/** Its check let it go: the verdict leads, not a time. */
+export const isProven = (charge: ChargeDto): boolean => charge.stage === 'ready' || charge.stage === 'fitted';

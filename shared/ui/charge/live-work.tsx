@@ -1,0 +1,179 @@
+import { lazy, Suspense } from 'react';
+import { View } from 'react-native';
+import type { ModuleTypeDto } from '@/shared/contract/equipment';
+import { moment } from '../format/clock';
+import { useFormats } from '../format/formats';
+import { Link } from '../primitives/link';
+import { Rule } from '../primitives/rule';
+import { Txt } from '../primitives/txt';
+import { makeStyles } from '../theme/make-styles';
+import { useBreakpoint } from '../theme/use-breakpoint';
+import { isUnderWay } from './card-model';
+import { CardRibbon } from './card-ribbon';
+import { ReadingLog } from './charge-log';
+import { Emergency } from './emergency';
+import { HandCallOut } from './hand-call-out';
+import { liveNoteId } from './live-acts';
+import { LiveFacts } from './live-facts';
+import { LiveHead, StageLine } from './live-head';
+import { ClipOnLine, CurrentLine, LookInLine } from './live-lines';
+import { isProven, type LiveScreenProps } from './live-props';
+import { ReadyFacts } from './ready-panel';
+import { SeenAndPlan } from './seen-and-plan';
+import { TopUpCallOut } from './top-up-call-out';
+import { OfflineCaution, WaitingReadings } from './waiting-readings';
+
+const DriftLine = lazy(() => import('./drift-line').then((module) => ({ default: module.DriftLine })));
+
+/** The middle of the live screen: the number and its ribbon, what asks for somebody, what was seen. */
+export function LiveWork(props: LiveScreenProps) {
+  const styles = useStyles();
+  const { charge, at, knownAt } = props;
+  const wide = useBreakpoint() === 'wide';
+  const proven = isProven(charge);
+  return (
+    <View style={styles.stack}>
+      {proven ? (
+        <StageLine charge={charge} now={at.now} knownAt={knownAt} />
+      ) : (
+        <LiveHead charge={charge} at={at} knownAt={knownAt} />
+      )}
+      {proven && !wide ? (
+        <>
+          <LiveFacts {...props} />
+          <Rule gap={4} />
+        </>
+      ) : null}
+      {proven ? <ReadyFacts charge={charge} now={at.now} /> : null}
+      <CardRibbon card={charge} at={at} height={proven ? 56 : 76} stale={knownAt !== null} />
+      <Drift {...props} />
+      <WhileOffline {...props} />
+      <Asks {...props} />
+      <Outcome {...props} />
+      {isUnderWay(charge) ? <Emergency chemistry={props.type && fireName[props.type.chemistry]} /> : null}
+      {wide || proven ? null : (
+        <>
+          <Rule gap={4} />
+          <LiveFacts {...props} />
+        </>
+      )}
+      {isUnderWay(charge) ? <SeenAndPlan charge={charge} now={at.now} /> : null}
+      {wide ? (
+        <View style={styles.log}>
+          <LiveReadings {...props} />
+        </View>
+      ) : null}
+    </View>
+  );
+}
+
+/** What the fire service needs to know of it. */
+const fireName: Record<ModuleTypeDto['chemistry'], string> = {
+  nmc: 'lithium-ion, NMC',
+  'lmo-blend': 'lithium-ion, LMO blend',
+  lfp: 'lithium-ion, LFP',
+  lto: 'lithium-ion, LTO',
+  nimh: 'nickel metal hydride',
+};
+
+/** All readings, with the way to put one right. */
+export const LiveReadings = ({ charge, at, onGo }: LiveScreenProps) => (
+  <ReadingLog
+    charge={charge}
+    now={at.now}
+    onCorrect={(reading) => onGo(`/charges/${charge.id}/log?correct=${reading.id}`)}
+  />
+);
+
+/** By when a ready module is to be fitted. */
+function Drift({ charge, type, at }: LiveScreenProps) {
+  if (charge.stage !== 'ready' || !type) return null;
+  return (
+    <Suspense fallback={null}>
+      <Rule gap={4} />
+      <DriftLine charge={charge} type={type} now={at.now} />
+    </Suspense>
+  );
+}
+
+/** What the figures are from while the link is down, what waits on this device, and what does not reach it. */
+function WhileOffline({ charge, at, knownAt, waiting, onRemoveWaiting }: LiveScreenProps) {
+  const { zone, marks } = useFormats();
+  const device = useBreakpoint() === 'phone' ? 'phone' : 'device';
+  const from = charge.lastReadingAt
+    ? `From the reading at ${moment(Date.parse(charge.lastReadingAt), zone, at.now, marks)}.`
+    : 'From the plan.';
+  const below =
+    waiting.length === 0
+      ? ''
+      : waiting.length === 1
+        ? ' The reading below is not in it yet.'
+        : ` The ${waiting.length} readings below are not in it yet.`;
+  return (
+    <>
+      {knownAt === null ? null : (
+        <Txt kind="small" tone="ink2">
+          {`${from} The clock goes on here.${below}`}
+        </Txt>
+      )}
+      <WaitingReadings charge={charge} waiting={waiting} now={at.now} device={device} onRemove={onRemoveWaiting} />
+      {knownAt !== null && isUnderWay(charge) ? <OfflineCaution charge={charge} now={at.now} device={device} /> : null}
+    </>
+  );
+}
+
+/** What asks for somebody: a top-up, a hand, a look-in, a time. */
+function Asks({ charge, at, knownAt, acts, topUp, onSheet }: LiveScreenProps) {
+  const offline = knownAt !== null;
+  const lines = {
+    charge,
+    now: at.now,
+    busy: acts.busy,
+    disabled: offline,
+    describedBy: offline ? liveNoteId : undefined,
+  };
+  return (
+    <>
+      {topUp ? (
+        <TopUpCallOut
+          groups={charge.restChecks.at(-1)?.verdict.groups ?? []}
+          topUp={topUp.option}
+          ruledOut={topUp.ruledOut}
+        />
+      ) : null}
+      <HandCallOut
+        {...lines}
+        onSwapped={acts.nextStep}
+        onOff={() => acts.currentOff()}
+        onOffEarlier={() => onSheet('off-since')}
+      />
+      <LookInLine {...lines} onDone={acts.lookIn} />
+      <CurrentLine {...lines} onOffAt={() => onSheet('off-since')} />
+      <ClipOnLine {...lines} onChange={() => onSheet('clip-on')} />
+    </>
+  );
+}
+
+/** Where a charge that is over has gone, and what it went on from. */
+function Outcome({ charge, at, onGo }: LiveScreenProps) {
+  const { zone, marks } = useFormats();
+  const stopped = charge.stage === 'stopped' && charge.stoppedAt ? Date.parse(charge.stoppedAt) : null;
+  return (
+    <>
+      {stopped === null ? null : (
+        <Txt>{`Stopped ${moment(stopped, zone, at.now, marks)}: ${charge.stopReason ?? 'no reason kept'}.`}</Txt>
+      )}
+      {charge.wentOnAs ? (
+        <Link
+          title={`It went on as ${charge.wentOnAs.number}`}
+          onPress={() => onGo(`/charges/${charge.wentOnAs?.id}`)}
+        />
+      ) : null}
+      {charge.topUpOf ? (
+        <Link title={`A top-up of ${charge.topUpOf.number}`} onPress={() => onGo(`/charges/${charge.topUpOf?.id}`)} />
+      ) : null}
+    </>
+  );
+}
+
+const useStyles = makeStyles(() => ({ stack: { rowGap: 8 }, log: { marginTop: 16 } }));
