@@ -30,7 +30,7 @@ beforeEach(() => {
   queryClient.clear();
   localStorage.clear();
   sessionStorage.clear();
-  rememberSignedIn(true);
+  rememberSignedIn('p1');
 });
 afterEach(() => vi.unstubAllGlobals());
 

@@ -24,7 +24,7 @@ beforeEach(() => {
   queryClient.clear();
   localStorage.clear();
   sessionStorage.clear();
-  rememberSignedIn(true);
+  rememberSignedIn('p1');
   vi.mocked(router.back).mockClear();
   server = fakeServer('manager');
   server.answers['GET /api/meters'] = () => Response.json([]);

@@ -41,7 +41,7 @@ beforeEach(() => {
   queryClient.clear();
   localStorage.clear();
   sessionStorage.clear();
-  rememberSignedIn(true);
+  rememberSignedIn('p1');
   vi.mocked(router.back).mockClear();
 });
 afterEach(() => vi.unstubAllGlobals());

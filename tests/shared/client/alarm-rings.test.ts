@@ -14,6 +14,7 @@ const alert = (kind: AlertKind, more: Partial<AlertDto> = {}): AlertDto => ({
   seen: '',
   checkFirst: '',
   raisedAt: new Date(raised).toISOString(),
+  lateByS: 0,
   takenBy: null,
   takenAt: null,
   clearedAt: null,

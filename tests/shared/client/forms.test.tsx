@@ -8,6 +8,7 @@ import { useContractForm, useFormField, wrongSentence } from '@/shared/client/fo
 import { queryClient } from '@/shared/client/query-client';
 import { sessionQuery } from '@/shared/client/session';
 import { text } from '@/shared/contract/common';
+import type { SessionDto } from '@/shared/contract/session';
 import { groupVolts, quantity } from '@/shared/contract/quantity';
 import { Field } from '@/shared/ui/primitives/field';
 
@@ -19,9 +20,8 @@ const schema = z.object({
 });
 type Output = z.infer<typeof schema>;
 
-const signIn = (id: string | null) =>
-  queryClient.setQueryData(
-    sessionQuery().queryKey,
+const signIn = (id: string | null) => {
+  const session: SessionDto | null =
     id === null
       ? null
       : {
@@ -29,8 +29,9 @@ const signIn = (id: string | null) =>
           workshop: { id: 'w', name: 'W', zone: 'UTC' },
           capabilities: [],
           expiresAt: '2027-01-01T00:00:00.000Z',
-        },
-  );
+        };
+  queryClient.setQueryData(sessionQuery().queryKey, session);
+};
 
 function Form({ send }: { send: (output: Output) => Promise<unknown> }) {
   const f = useContractForm({
