@@ -15,6 +15,9 @@ function requireNode() {
   }
 }
 
+/** What npm leaves out by itself: packages for other systems, and leftovers of an earlier tree. */
+const mayBeMissing = (entry) => entry.optional || entry.devOptional || entry.extraneous;
+
 /** Whether node_modules holds exactly what package-lock.json names (npm keeps its own list of what it installed). */
 function installedAsLocked() {
   const list = fromRoot('node_modules/.package-lock.json');
@@ -22,8 +25,7 @@ function installedAsLocked() {
   const wanted = JSON.parse(fs.readFileSync(fromRoot('package-lock.json'), 'utf8')).packages;
   const have = JSON.parse(fs.readFileSync(list, 'utf8')).packages;
   return Object.entries(wanted).every(
-    ([folder, entry]) =>
-      folder === '' || entry.optional || entry.devOptional || have[folder]?.version === entry.version,
+    ([folder, entry]) => folder === '' || mayBeMissing(entry) || have[folder]?.version === entry.version,
   );
 }
 
