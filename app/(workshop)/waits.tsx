@@ -109,7 +109,7 @@ function WaitsPage() {
               size="low"
               value={params.type || 'all'}
               options={[
-                { value: 'all', label: 'All module types' },
+                { value: 'all', label: 'All types' },
                 ...types.map((type) => ({ value: type.id, label: type.name })),
               ]}
               onChange={(value) => filter({ type: value === 'all' ? '' : value })}
@@ -147,7 +147,7 @@ function WaitsPage() {
               <WaitFigures waits={data} today={today} />
               <Suspense fallback={<View style={{ height: 240 }} />}>
                 <WeekChart waits={data} onCsv={csv} />
-                <Rule />
+                <Rule gap={0} />
                 <StageRibbon stages={data.stages} />
                 <GroupTable label="Waits by module type" first="Module type" groups={data.byModuleType} />
                 <GroupTable label="Waits by charger" first="Charger" groups={data.byCharger} />
@@ -224,5 +224,5 @@ function WaitsPage() {
 const useStyles = makeStyles(() => ({
   page: { rowGap: 24, paddingTop: 8 },
   filters: { flexDirection: 'row', flexWrap: 'wrap', columnGap: 12, rowGap: 12 },
-  filter: { flexGrow: 1, flexBasis: 150, maxWidth: 320 },
+  filter: { flexGrow: 1, flexBasis: 150, maxWidth: 360 },
 }));

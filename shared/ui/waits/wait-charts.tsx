@@ -8,7 +8,9 @@ import { share } from '../format/quantities';
 import { Duration } from '../primitives/num';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
+import { useBreakpoint } from '../theme/use-breakpoint';
 import { WaitRibbon } from '../wait-ribbon/wait-ribbon';
+import { stageLabelPlaces } from './stage-label-places';
 import { againstPlan, fewCharges } from './wait-figures';
 
 function useWidth() {
@@ -133,16 +135,31 @@ export function StageRibbon({ stages }: { stages: readonly WaitStageDto[] }) {
           twin={stages.map((stage) => `${stageNames[stage.stage]} ${duration(stage.medianS, 'minute')}`).join(', ')}
         />
       )}
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: 20, rowGap: 6 }}>
-        {stages.map((stage) => (
-          <View key={stage.stage} style={{ flexGrow: 1 }}>
-            <Txt kind="small" tone="ink2">
-              {stageNames[stage.stage]}
-            </Txt>
-            <Duration seconds={stage.medianS} precision="minute" kind="numS" />
-          </View>
-        ))}
-      </View>
+      <StageLabels stages={stages} begins={begins.map((begin) => (begin / total) * width)} width={width} />
+    </View>
+  );
+}
+
+function StageLabels({
+  stages,
+  begins,
+  width,
+}: {
+  stages: readonly WaitStageDto[];
+  begins: readonly number[];
+  width: number;
+}) {
+  const places = stageLabelPlaces(begins, width);
+  return (
+    <View style={places ? { height: 48 } : { flexDirection: 'row', flexWrap: 'wrap', columnGap: 20, rowGap: 6 }}>
+      {stages.map((stage, i) => (
+        <View key={stage.stage} style={places ? { position: 'absolute', left: places[i] } : { flexGrow: 1 }}>
+          <Txt kind="small" tone="ink2">
+            {stageNames[stage.stage]}
+          </Txt>
+          <Duration seconds={stage.medianS} precision="minute" kind="numS" />
+        </View>
+      ))}
     </View>
   );
 }
@@ -158,8 +175,14 @@ export function GroupTable({
   groups: readonly WaitGroupDto[];
 }) {
   const few = groups.some((group) => group.charges < fewCharges);
+  const phone = useBreakpoint() === 'phone';
   return (
     <View style={{ rowGap: 6 }}>
+      {phone ? (
+        <Txt kind="heading" heading={3}>
+          {label}
+        </Txt>
+      ) : null}
       <Table
         label={label}
         rows={groups}
@@ -171,7 +194,8 @@ export function GroupTable({
             title: 'Charges',
             numeric: true,
             phone: 'detail',
-            cell: (group) => `${group.charges}${group.charges < fewCharges ? ' *' : ''}`,
+            cell: (group) =>
+              `${group.charges}${phone ? (group.charges === 1 ? ' charge' : ' charges') : ''}${group.charges < fewCharges ? ' *' : ''}`,
           },
           { key: 'hours', title: 'Hours', numeric: true, phone: 'none', cell: (group) => group.waitHours.toFixed(1) },
           {

@@ -1,10 +1,10 @@
 import { View } from 'react-native';
 import type { WaitsDto } from '@/shared/contract/waits';
 import { NBSP } from '../format/marks';
-import { addDays } from '../format/zone';
 import { Duration, Num } from '../primitives/num';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
+import { weekFigure } from './week-figure';
 
 /** Under so many charges a middle value says little. */
 export const fewCharges = 5;
@@ -14,29 +14,6 @@ export const againstPlan = (seconds: number): string => {
   const minutes = Math.round(seconds / 60);
   return `${minutes > 0 ? '+' : minutes < 0 ? '−' : ''}${Math.abs(minutes)}${NBSP}min`;
 };
-
-/** The last whole week, and how it stands against the first of the period. */
-export function weekFigure(
-  weeks: WaitsDto['weeks'],
-  today: string,
-): { title: string; hours: number; note: string } | null {
-  // The present week is not over: its hours say nothing beside a whole one.
-  const whole = weeks.filter((week) => addDays(week.monday, 6) < today);
-  const last = whole.at(-1);
-  const first = whole[0];
-  if (!last || !first) {
-    const present = weeks.at(-1);
-    return present ? { title: `Waited in week ${present.week}`, hours: present.waitHours, note: 'so far' } : null;
-  }
-  const more = Math.round(last.waitHours) - Math.round(first.waitHours);
-  const note =
-    last === first
-      ? `${last.charges} charges`
-      : more === 0
-        ? `as in week ${first.week}`
-        : `${Math.abs(more)}${NBSP}h ${more < 0 ? 'less' : 'more'} than in week ${first.week}`;
-  return { title: `Waited in week ${last.week}`, hours: last.waitHours, note };
-}
 
 /** The figures over the page, each with what it means. */
 export function WaitFigures({ waits, today }: { waits: WaitsDto; today: string }) {

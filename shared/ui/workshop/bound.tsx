@@ -24,7 +24,12 @@ function useBound<V extends FieldValues>({ form, name }: Bound<V>) {
   const { field, fieldState } = useController<V>({ control: form.control as never, name });
   return {
     value: field.value as unknown,
-    onChange: (value: unknown) => field.onChange(value),
+    onChange: (value: unknown) => {
+      // A sentence that is being answered goes at the first key: were it taken away on leaving, what stands under it
+      // would jump from under the finger that presses it.
+      if (fieldState.error) form.clearErrors(name);
+      field.onChange(value);
+    },
     onBlur: field.onBlur,
     ref: field.ref,
     error: fieldState.error ? (sentence(fieldState.error.message) ?? 'Choose or type this.') : undefined,

@@ -39,11 +39,12 @@ export function ChargersTable({
       rows={rows}
       rowKey={(row) => row.id}
       columns={[
-        { key: 'name', title: 'Channel', phone: 'name', cell: (row) => <Txt kind="numS">{row.name}</Txt> },
+        { key: 'name', title: 'Channel', phone: 'name', width: 58, cell: (row) => <Txt kind="numS">{row.name}</Txt> },
         {
           key: 'amps',
           title: 'Current',
           numeric: true,
+          width: 60,
           phone: 'detail',
           cell: (row) => plannedAmps(row.maxAmps, marks),
         },
@@ -51,6 +52,7 @@ export function ChargersTable({
           key: 'volts',
           title: 'Up to',
           numeric: true,
+          width: 62,
           phone: 'detail',
           cell: (row) => `${shortest(row.maxVolts, 2, marks)}${NBSP}V`,
         },
@@ -62,23 +64,23 @@ export function ChargersTable({
         },
         {
           key: 'senses',
-          title: 'Senses',
+          title: 'Senses at',
           phone: 'none',
-          share: 1.3,
-          cell: (row) => (row.senses === 'module' ? 'at the module' : 'its own terminals'),
+          share: 1,
+          cell: (row) => (row.senses === 'module' ? 'the module' : 'terminals'),
         },
         {
           key: 'checked',
           title: 'Meter checked',
           phone: 'none',
-          share: 1.2,
+          share: 1.1,
           cell: (row) => meterChecked(meterOf(row.charger), zone, now),
         },
         {
           key: 'now',
           title: 'Now',
           phone: 'detail',
-          share: 1.8,
+          share: 2,
           cell: (row) =>
             row.heldBy ? (
               row.heldBy.stage in stages ? (

@@ -114,9 +114,7 @@ function Drawing({ input, width }: { input: CurveInput; width: number }) {
     >
       <Grid lines={drawing.lines.map((line) => ({ ...line, text: local(line.text) }))} left={left} width={width} />
       <Rect x={drawing.flat.x} y={0} width={drawing.flat.width} height={VOLTS} fill={colors.well} />
-      {narrow ? null : (
-        <Word x={drawing.flat.x + drawing.flat.width / 2} y={VOLTS - 10} anchor="middle" text="flattest" />
-      )}
+      {narrow ? null : <Word x={drawing.flat.x + drawing.flat.width / 2} y={15} anchor="middle" text="flattest" />}
       {limits.map(({ key: name, y, text, below }) => (
         <G key={name}>
           <Path d={`M${left} ${y}H${width}`} stroke={colors.ink} strokeWidth={2} strokeDasharray={[7, 4]} />

@@ -52,7 +52,7 @@ export function PeopleTable({
           key: 'name',
           title: 'Name',
           phone: 'name',
-          share: 1.3,
+          share: 1.2,
           cell: (row) =>
             'person' in row ? (
               <Txt bold tone={row.person.disabled ? 'ink3' : 'ink'}>
@@ -72,7 +72,7 @@ export function PeopleTable({
           key: 'email',
           title: 'E-mail',
           phone: 'detail',
-          share: 2,
+          share: 2.5,
           tone: 'ink2',
           cell: (row) => ('person' in row ? row.person.email : row.invitation.email),
         },
