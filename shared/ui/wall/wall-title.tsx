@@ -39,7 +39,7 @@ export function TitleOfRow({
         ) : null}
         {rest}
       </WallText>
-      <WallText size={small} line={smallLine} tone="ink2">
+      <WallText size={small} line={smallLine} tone="ink2" style={{ marginTop: Math.round(size * 0.14) }}>
         {under}
       </WallText>
     </View>
