@@ -137,6 +137,8 @@ export function Field({
           submitBehavior={multiline ? 'newline' : 'submit'}
           enterKeyHint={nextKey}
           aria-labelledby={fieldIds(id).label}
+          // The same words: checkers count a label that is scrolled out of sight as none.
+          aria-label={frame.label}
           {...web({
             'aria-describedby': describedBy(id, frame),
             'aria-invalid': frame.error !== undefined || undefined,

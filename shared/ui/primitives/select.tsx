@@ -70,6 +70,7 @@ export function Select<V extends string>({
             onBlur?.();
           },
           'aria-labelledby': fieldIds(id).label,
+          'aria-label': frame.label,
           'aria-describedby': describedBy(id, frame),
           'aria-invalid': frame.error !== undefined || undefined,
           'aria-required': required,
