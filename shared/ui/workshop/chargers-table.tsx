@@ -5,13 +5,22 @@ import { NBSP } from '../format/marks';
 import { shortest } from '../format/number';
 import { plannedAmps } from '../format/quantities';
 import { Link } from '../primitives/link';
-import { Table } from '../primitives/table';
+import { Table, type Column } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 import { StageTag } from '../stage/stage-tag';
 import { stages, type StageMark } from '../stage/stages';
+import { useBreakpoint } from '../theme/use-breakpoint';
 import { meterChecked } from './meter-age';
 
 type Row = ChannelDto & { charger: ChargerDto };
+
+const sensesColumn: Column<Row> = {
+  key: 'senses',
+  width: 78,
+  title: 'Senses at',
+  phone: 'none',
+  cell: (row) => (row.senses === 'module' ? 'the module' : 'terminals'),
+};
 
 /** Every channel of the workshop with what it gives, its charger's meter, and who holds it now. */
 export function ChargersTable({
@@ -28,6 +37,8 @@ export function ChargersTable({
   onEdit: (charger: ChargerDto) => void;
 }) {
   const { zone, marks } = useFormats();
+  // On the tablet the room goes to who has a channel now.
+  const tablet = useBreakpoint() === 'tablet';
   const rows: Row[] = chargers
     .filter((charger) => !charger.retired)
     .flatMap((charger) => charger.channels.map((channel) => ({ ...channel, charger })))
@@ -58,29 +69,24 @@ export function ChargersTable({
         },
         {
           key: 'direction',
+          width: 86,
           title: 'Direction',
           phone: 'none',
           cell: (row) => (row.canDischarge ? 'up and down' : 'up'),
         },
-        {
-          key: 'senses',
-          title: 'Senses at',
-          phone: 'none',
-          share: 1,
-          cell: (row) => (row.senses === 'module' ? 'the module' : 'terminals'),
-        },
+        ...(tablet ? [] : [sensesColumn]),
         {
           key: 'checked',
+          width: 104,
           title: 'Meter checked',
           phone: 'none',
-          share: 1.1,
           cell: (row) => meterChecked(meterOf(row.charger), zone, now),
         },
         {
           key: 'now',
           title: 'Now',
           phone: 'detail',
-          share: 2,
+          share: 1,
           cell: (row) =>
             row.heldBy ? (
               row.heldBy.stage in stages ? (
