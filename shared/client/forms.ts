@@ -84,6 +84,9 @@ export function useContractForm<Values extends FieldValues, Output>({
     shouldFocusError: true,
   });
 
+  // Read in every render: react-hook-form tells only of what was read before it changed.
+  const { errors } = form.formState;
+
   const secrets = secret.join(' ');
   useEffect(() => {
     if (!draft) return;
@@ -134,7 +137,7 @@ export function useContractForm<Values extends FieldValues, Output>({
     busy,
     problem,
     error,
-    wrong: tried ? countOf(form.formState.errors as FieldErrors) : 0,
+    wrong: tried ? countOf(errors as FieldErrors) : 0,
     restored: kept !== null,
     clear: (next = initial) => {
       form.reset(next);
