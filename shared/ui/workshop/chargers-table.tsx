@@ -69,7 +69,7 @@ export function ChargersTable({
         },
         {
           key: 'direction',
-          width: 86,
+          width: 94,
           title: 'Direction',
           phone: 'none',
           cell: (row) => (row.canDischarge ? 'up and down' : 'up'),
