@@ -1,3 +1,4 @@
+/* eslint-disable max-lines -- to be split: hooks and parts need a place that may import both shared/client and shared/ui */
 import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
 import { useState, type ReactNode } from 'react';
 import { View } from 'react-native';
