@@ -2,7 +2,7 @@ import { View } from 'react-native';
 import type { ChargeCardDto } from '@/shared/contract/charge';
 import { CardColumn } from '../charge/card-column';
 import { markOf, readyOf, stageWords, type CardClock } from '../charge/card-model';
-import { readyWithBand } from '../format/clock';
+import { readyAt, readyBounds } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { Button } from '../primitives/button';
 import { CallOut } from '../primitives/call-out';
@@ -53,7 +53,12 @@ export function BenchCallOut({
               {card.title}
             </Txt>
             <Txt tone="ink2">{fact(card, stageWords(card), at.now)}</Txt>
-            {red && ready ? <Txt tone="ink2">{`now ${readyWithBand(ready, zone, at.now, marks)}`}</Txt> : null}
+            {red && ready ? (
+              <View style={styles.now}>
+                <Txt tone="ink2" nowrap>{`now ready ${readyAt(ready, zone, at.now, marks)}`}</Txt>
+                <Txt tone="ink2" nowrap>{`(${readyBounds(ready, zone, at.now, marks)})`}</Txt>
+              </View>
+            ) : null}
           </View>
           <CardColumn card={card} lagLimitVolts={lagLimitVolts} />
         </View>
@@ -77,4 +82,5 @@ const useStyles = makeStyles(() => ({
     marginTop: 8,
   },
   words: { flex: 1, minWidth: 0 },
+  now: { flexDirection: 'row', flexWrap: 'wrap', columnGap: 5 },
 }));

@@ -34,7 +34,7 @@ export function LookInLine({
     left < 0 ? `${duration((now - at) / 1000, 'minute')} over` : `in ${duration((at - now) / 1000, 'minute')}`;
   return (
     <View style={styles.line}>
-      <Txt tone={left < 0 ? 'alarm' : 'ink2'} bold={left < 0} style={styles.words}>
+      <Txt tone={left < 0 ? 'ink' : 'ink2'} bold={left < 0} style={styles.words}>
         {`Look-in ${moment(at, zone, now, marks)}, ${when}`}
       </Txt>
       <Button

@@ -3,6 +3,7 @@ import { View } from 'react-native';
 import { clock } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { StandingLine } from '../primitives/call-out';
+import { Txt } from '../primitives/txt';
 import { Columns } from '../screen/columns';
 import { HeaderBar } from '../screen/header-bar';
 import { Screen } from '../screen/screen';
@@ -70,6 +71,9 @@ function Side(props: LiveScreenProps) {
   const wide = useBreakpoint() === 'wide';
   return (
     <View style={styles.side}>
+      <Txt heading={2} style={styles.quiet}>
+        Who has it, and how it goes
+      </Txt>
       <WhoHasIt
         charge={charge}
         mayHandOver={props.mayHandOver}
@@ -86,4 +90,8 @@ function Side(props: LiveScreenProps) {
   );
 }
 
-const useStyles = makeStyles(() => ({ side: { rowGap: 20 } }));
+const useStyles = makeStyles(() => ({
+  side: { rowGap: 20 },
+  // For readers only: it names what the picture's own heading stands under.
+  quiet: { position: 'absolute', width: 1, height: 1, overflow: 'hidden' },
+}));

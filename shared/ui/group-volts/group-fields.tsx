@@ -3,7 +3,8 @@ import { View } from 'react-native';
 import { Field } from '../primitives/field';
 import type { FieldVerdict } from '../primitives/field-frame';
 import { makeStyles } from '../theme/make-styles';
-import { pastedVolts, type GroupForm } from './group-form';
+import { spreadVolts, type GroupForm } from './group-form';
+import { usePastedVolts } from './use-pasted-volts';
 
 export interface GroupEntryProps {
   form: GroupForm;
@@ -46,29 +47,26 @@ function GroupField({ form, count, group, verdictOf, onLeave, onLast }: GroupEnt
     if (!last) return form.setFocus(`groupVolts.${group + 1}`);
     onLast?.();
   };
+  const box = usePastedVolts((many) => spreadVolts(form, group, count, many));
   return (
-    <Field
-      label={`Group ${group + 1}`}
-      kind="decimal"
-      unit="V"
-      value={value ?? ''}
-      onChangeText={(text) => {
-        const many = pastedVolts(text);
-        if (!many) return onChange(text);
-        many
-          .slice(0, count - group)
-          .forEach((one, index) => form.setValue(`groupVolts.${group + index}`, one, { shouldDirty: true }));
-      }}
-      onBlur={() => {
-        onBlur();
-        onLeave?.();
-      }}
-      ref={ref}
-      error={fieldState.error?.message}
-      verdict={fieldState.error ? undefined : (verdictOf?.(group) ?? undefined)}
-      onSubmit={next}
-      nextKey={last ? 'done' : 'next'}
-    />
+    <View ref={box}>
+      <Field
+        label={`Group ${group + 1}`}
+        kind="decimal"
+        unit="V"
+        value={value ?? ''}
+        onChangeText={onChange}
+        onBlur={() => {
+          onBlur();
+          onLeave?.();
+        }}
+        ref={ref}
+        error={fieldState.error?.message}
+        verdict={fieldState.error ? undefined : (verdictOf?.(group) ?? undefined)}
+        onSubmit={next}
+        nextKey={last ? 'done' : 'next'}
+      />
+    </View>
   );
 }
 

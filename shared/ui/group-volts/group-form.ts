@@ -14,14 +14,14 @@ export const asGroupForm = (form: object): GroupForm => form as GroupForm;
 export const padAbove = 6;
 
 /**
- * Several voltages pasted into one field: '3.968 3.966', one a line, or separated by semicolons. A comma between digits
- * is a decimal comma.
+ * Several voltages pasted into one field: '3.968 3.966', one a line, separated by semicolons, or by commas where the
+ * decimals have points.
  * @returns null: it is one value
  */
 export function pastedVolts(text: string): string[] | null {
   const parts = text
     .replace(/(\d)\s*[vV](?![a-zA-Z])/g, '$1')
-    .split(/[\s;]+|,(?=\s)|,(?=\d+[.,]\d)/)
+    .split(/[\s;]+|,(?=\s)|,(?=\d+\.\d)/)
     .map((part) => part.trim())
     .filter((part) => part !== '');
   return parts.length > 1 && parts.every((part) => /^[−-]?\d+([.,]\d+)?$/.test(part)) ? parts : null;
@@ -38,3 +38,9 @@ export function groupList(numbers: readonly number[]): string {
   if (names.length <= 4) return `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
   return `${names.slice(0, 3).join(', ')} and ${names.length - 3} more`;
 }
+
+/** Puts a pasted list into the groups from one on, no further than there are. */
+export const spreadVolts = (form: GroupForm, from: number, count: number, values: readonly string[]): void =>
+  values
+    .slice(0, count - from)
+    .forEach((value, index) => form.setValue(`groupVolts.${from + index}`, value, { shouldDirty: true }));

@@ -10,8 +10,9 @@ import { makeStyles } from '../theme/make-styles';
 import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import type { GroupEntryProps } from './group-fields';
-import { pastedVolts } from './group-form';
+import { spreadVolts } from './group-form';
 import { GroupStrip } from './group-strip';
+import { usePastedVolts } from './use-pasted-volts';
 
 /**
  * Many groups, one at a time, with keys of 48 px in place of the system's: the present group large, the way back and on
@@ -46,14 +47,11 @@ export function GroupPad({ form, count, verdictOf, onLeave, onLast }: GroupEntry
     }
   }, [form, count]);
 
-  const put = (text: string) => {
-    const many = pastedVolts(text);
-    if (!many) return form.setValue(`groupVolts.${present}`, text, { shouldDirty: true });
-    many
-      .slice(0, count - present)
-      .forEach((one, index) => form.setValue(`groupVolts.${present + index}`, one, { shouldDirty: true }));
+  const put = (text: string) => form.setValue(`groupVolts.${present}`, text, { shouldDirty: true });
+  const box = usePastedVolts((many) => {
+    spreadVolts(form, present, count, many);
     setPresent(Math.min(count - 1, present + many.length));
-  };
+  });
   const go = (group: number) => {
     if (value.trim() !== '') void form.trigger(`groupVolts.${present}`);
     onLeave?.();
@@ -69,7 +67,7 @@ export function GroupPad({ form, count, verdictOf, onLeave, onLast }: GroupEntry
       <GroupStrip values={values} count={count} present={present} verdictOf={verdictOf} onGo={go} />
       <View style={styles.head}>
         <Txt kind="numM" nativeID="pad-group">{`G${present + 1}`}</Txt>
-        <View style={[styles.box, (error || verdict?.inside === false) && styles.bad]}>
+        <View ref={box} style={[styles.box, (error || verdict?.inside === false) && styles.bad]}>
           <TextInput
             ref={input}
             value={value}

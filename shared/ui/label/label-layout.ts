@@ -112,7 +112,7 @@ export function layoutLabel({ title, spare, position, line, volts, ready }: Labe
   const wide = right - head;
   const pair = `${spare}  ${position ?? ''}`;
   const pairSize = fitted(pair, wide, 5);
-  const crowded = volts.length > 8 && volts.length <= allBelow;
+  const crowded = volts.length > 4 && volts.length <= allBelow;
   const markSize = crowded ? 3.8 : 6.4;
   const mark = { x: right - markSize, y: crowded ? 35.4 : 32.4, size: markSize };
   const text = (
