@@ -46,8 +46,8 @@ export function switchSound(on: boolean): void {
 export function playSound(name: SoundName): void {
   const tones = contours[name];
   try {
-    // Refused before the first tap; some browsers throw instead of answering false.
-    navigator.vibrate?.(vibrationOf(tones));
+    // Before the first tap a browser refuses it, and says so in its console; some throw instead of answering false.
+    if (navigator.userActivation?.hasBeenActive !== false) navigator.vibrate?.(vibrationOf(tones));
   } catch {
     // The sound is the other way.
   }
