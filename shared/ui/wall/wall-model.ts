@@ -1,5 +1,6 @@
 /** What the wall says of a charge, and which of its layouts holds. Pure: instants are epoch ms, sizes px of a 1920 px wide picture. */
 import type { ChargeCardDto } from '@/shared/contract/charge';
+import { movedMs } from '../charge/card-model';
 import { clock, readyBounds, told } from '../format/clock';
 import { EN_DASH, pointMarks, type LocaleMarks } from '../format/marks';
 import { dayOf } from '../format/zone';
@@ -72,10 +73,8 @@ function dayPrefix(instant: number, zone: string, now: number): string {
   return `${day} `;
 }
 
-/** A held charge is not reckoned anew by the server; its finish moves with the clock. */
-export function movedBy(card: WallCard, boardAt: number, now: number): number {
-  return card.stage === 'held' ? Math.max(0, now - boardAt) : 0;
-}
+/** How far what is to come has moved since the server made the board: what waits moves with the clock. */
+export const movedBy = (card: WallCard, boardAt: number, now: number): number => movedMs(card, { now, asOf: boardAt });
 
 /**
  * The time of a row: when it will be ready with its band; minutes over, or waiting, in its place.
