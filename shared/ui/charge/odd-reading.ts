@@ -1,5 +1,6 @@
 /** A reading that the plan does not explain: what was seen, and what to check before it is believed. Pure. */
 import type { ChargeDto } from '@/shared/contract/charge';
+import { readQuantity } from '@/shared/contract/quantity';
 import { moment } from '../format/clock';
 import type { LocaleMarks } from '../format/marks';
 import {
@@ -9,7 +10,6 @@ import {
   millivolts,
   volts as voltsWords,
 } from '../format/quantities';
-import { parseNumber } from '../format/parse';
 import { channelsOf, isFlowing } from './card-model';
 import type { LogValues } from './log-form';
 
@@ -69,8 +69,9 @@ export function expectedNow(charge: ChargeDto): ExpectedNow {
 const underCurrentVolts = 0.5;
 const mostTimesPlanned = 2;
 
-const value = (text: string): number | null => {
-  const read = parseNumber(text);
+/** As the form reads it: '3968 mV' is 3.968 V, and what is in another unit is no reading yet. */
+const value = (text: string, unit: 'V' | 'A' | '°C'): number | null => {
+  const read = readQuantity(text, { name: '', unit, min: -99_999, max: 99_999 });
   return read.ok ? read.value : null;
 };
 
@@ -87,7 +88,7 @@ export function oddReading(typed: LogValues, charge: ChargeDto, context: OddCont
 }
 
 function oddTemperature(typed: LogValues, charge: ChargeDto, { maxChargeCelsius }: OddContext): OddReading | null {
-  const celsius = value(typed.celsius);
+  const celsius = value(typed.celsius, '°C');
   if (celsius === null) return null;
   const odd = { field: 'celsius' as const, again: 'Read the temperature again', group: null };
   if (maxChargeCelsius !== null && celsius > maxChargeCelsius)
@@ -116,7 +117,7 @@ const median = (values: readonly number[]): number => {
 /** One group off from what was expected, beside the others: a module that is off as a whole shifts them all. */
 function oddGroupVolts(typed: LogValues, charge: ChargeDto, context: OddContext): OddReading | null {
   const { lagLimitVolts, zone, now, marks } = context;
-  const seen = typed.groupVolts.map(value);
+  const seen = typed.groupVolts.map((text) => value(text, 'V'));
   const most = charge.chargeLimitVolts + underCurrentVolts;
   if (
     seen.some((one) => one === null || one > most || one < 0) ||
@@ -137,7 +138,7 @@ function oddGroupVolts(typed: LogValues, charge: ChargeDto, context: OddContext)
     .sort((a, b) => a.at.localeCompare(b.at))
     .at(-1);
   const last = before?.groupVolts?.[group];
-  const clips = value(typed.terminalVolts);
+  const clips = value(typed.terminalVolts, 'V');
   const expected = expectedNow(charge).volts;
   const silent =
     charge.way === 'terminals' &&
@@ -162,7 +163,7 @@ function oddGroupVolts(typed: LogValues, charge: ChargeDto, context: OddContext)
 }
 
 function oddCurrent(typed: LogValues, charge: ChargeDto, { marks }: OddContext): OddReading | null {
-  const seen = value(typed.amps);
+  const seen = value(typed.amps, 'A');
   const expected = expectedNow(charge).amps;
   if (seen === null || expected === null) return null;
   const size = Math.abs(seen);
@@ -183,7 +184,7 @@ function oddCurrent(typed: LogValues, charge: ChargeDto, { marks }: OddContext):
 }
 
 function oddClips(typed: LogValues, charge: ChargeDto, { marks }: OddContext): OddReading | null {
-  const seen = value(typed.terminalVolts);
+  const seen = value(typed.terminalVolts, 'V');
   const expected = expectedNow(charge).volts;
   if (seen === null || expected === null) return null;
   const way = charge.option.steps[charge.stepIndex]?.way ?? charge.way;
