@@ -12,6 +12,8 @@ export interface LaunchOptions {
   env?: Record<string, string>;
   /** A data folder to use again; without it a fresh one is made and removed by `stop`. */
   dataDir?: string;
+  /** The port of a server that ran before; without it a free one. */
+  port?: number;
 }
 
 export interface Launched {
@@ -61,12 +63,12 @@ async function untilReady(url: string, child: ChildProcess, output: () => string
  * Starts the built server (dist-server/main.js, web app from dist/) on a free port of 127.0.0.1.
  * @throws Error when it was not built or does not get ready.
  */
-export async function launch({ demo = true, env = {}, dataDir }: LaunchOptions = {}): Promise<Launched> {
+export async function launch({ demo = true, env = {}, dataDir, port: wished }: LaunchOptions = {}): Promise<Launched> {
   const main = fromRoot('dist-server/main.js');
   if (!fs.existsSync(main))
     throw new Error('The server is not built. Run `npm run build` first; `npm test` does it by itself.');
   const folder = dataDir ?? fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-test-'));
-  const port = await freePort();
+  const port = wished ?? (await freePort());
   const child = spawn(process.execPath, ['--enable-source-maps', main], {
     cwd: fromRoot('.'),
     stdio: ['ignore', 'pipe', 'pipe'],
