@@ -28,7 +28,8 @@ export const useWallRequest = (userCode: string | null) =>
 export const useApproveWall = () =>
   useWrite({
     send: (input: ApproveWallInput) => api.post<WallDto>('/wall/approvals', input),
-    changes: [roots.walls, roots.wallRequest],
+    // Its request is not asked for again: it is answered, and the page that showed it closes.
+    changes: [roots.walls],
   });
 
 /** Takes a wall's right to read back; its screen shows a code again. */
@@ -39,5 +40,4 @@ export const useRevokeWall = () =>
 export const useRefuseWall = () =>
   useWrite({
     send: (userCode: string) => api.delete(`/wall/requests/${encodeURIComponent(userCode)}`),
-    changes: [roots.wallRequest],
   });

@@ -3,6 +3,7 @@ import { ScrollView, View } from 'react-native';
 import { makeStyles } from '../theme/make-styles';
 import { margin, widths } from '../theme/tokens';
 import { useBreakpoint } from '../theme/use-breakpoint';
+import { useScrollFocus } from './scroll-focus';
 import { ShellStrip } from './shell-strip';
 
 /**
@@ -29,6 +30,7 @@ export function Screen({
   const styles = useStyles();
   const at = useBreakpoint();
   const shellStrip = useContext(ShellStrip);
+  const body = useScrollFocus();
   const narrow = at === 'tablet' || (at === 'wide' && single);
   return (
     <View role="main" style={styles.screen}>
@@ -37,6 +39,7 @@ export function Screen({
       </View>
       {strip ?? shellStrip}
       <ScrollView
+        ref={body}
         style={styles.scroll}
         contentContainerStyle={[styles.body, at === 'wide' && styles.wideEdge, at === 'wide' && styles.page]}
         keyboardShouldPersistTaps="handled"
