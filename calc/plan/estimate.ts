@@ -66,9 +66,15 @@ const REST_S = 3600;
 /** Every estimate of the same numbers is the same to the last digit. */
 const SEED = 20_260_609;
 
+/** Cautions about what this estimate asks nobody for: leads and meters. Their doubt is in the band all the same. */
+const unasked: ReadonlySet<string> = new Set(['thin-leads', 'other-meter']);
+
 /**
  * Time and band of one charge through the terminals of one charger, for both finishes: the planner itself with a
  * charger and a module of which only these numbers are known. Limits are the chemistry's.
+ *
+ * A plan warns where nobody noted the meter of a reading. Here there is no meter to note, so it does not: the offset of
+ * two meters widens the band as in a plan without them.
  *
  * @returns no way where the numbers rule the charge out; then `refusals` or `ruledOut` says why
  */
@@ -90,7 +96,7 @@ export function quickEstimate(numbers: QuickNumbers): QuickEstimate {
     cautions: firstOfEach([
       ...plan.cautions,
       ...plan.options.flatMap(({ way, cautions }) => (way === 'terminals' ? cautions : [])),
-    ]).filter(({ code }) => code !== 'thin-leads'),
+    ]).filter(({ code }) => !unasked.has(code)),
     ruledOut: plan.alreadyWithin
       ? ['The spare rests within 5\u00a0mV of the target already. Nothing is to be charged.']
       : [...new Set(reasons)],

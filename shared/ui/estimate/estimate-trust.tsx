@@ -21,8 +21,8 @@ export function EstimateTrust({
   const { marks } = useFormats();
   const doubt = doubtWords[way.dominant];
   const rest = way.segments.filter(({ kind }) => kind === 'rest').reduce((sum, { fromS, toS }) => sum + toS - fromS, 0);
-  // Said above in the words of six numbers: nobody was asked for a meter or a measurement here.
-  const cautions = estimate.cautions.filter(({ code }) => code !== 'other-meter' && code !== 'unknown-health');
+  // Said above in the words of six numbers: nobody was asked for a measurement here.
+  const cautions = estimate.cautions.filter(({ code }) => code !== 'unknown-health');
   return (
     <View style={{ rowGap: 8 }}>
       <Txt tone="ink2">

@@ -1,7 +1,10 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { quickEstimate } from '@/calc/index';
 import type { EstimateDto } from '@/shared/contract/estimate';
+import type { PlanDto } from '@/shared/contract/plan';
+import { planForm } from '../../support/forms';
 import { makeTestServer, type TestServer } from '../../support/server';
+import { stock } from '../../support/stocked';
 
 let server: TestServer;
 beforeAll(async () => {
@@ -59,13 +62,25 @@ describe('the quick estimate over the API', () => {
     });
   });
 
+  it('asks for no meter, and so does not say that nobody noted one; a plan without meters does', async () => {
+    const answer = await server.anyone.post('/api/estimates', form()).expect(200);
+    expect((answer.body as EstimateDto).cautions.map(({ code }) => code)).toEqual(['unknown-health']);
+    const stocked = await stock(server.agentFor('manager'));
+    const planned = await server.agentFor('technician').post('/api/plans', {
+      ...planForm(stocked.spare.id),
+      meterId: null,
+    });
+    const { plan } = planned.body as PlanDto;
+    expect(plan.cautions.map(({ code }) => code)).toContain('other-meter');
+  });
+
   it('refuses a deep-discharged spare with 200 and the reason', async () => {
     const answer = await server.anyone.post('/api/estimates', form({ spareVolts: '2.41' })).expect(200);
     expect((answer.body as EstimateDto).refusals.map(({ code }) => code)).toEqual(['deep-discharged']);
   });
 
   it('is throttled by address: the ninth in a minute waits', async () => {
-    for (let asked = 3; asked < 8; asked += 1) await server.anyone.post('/api/estimates', form());
+    for (let asked = 4; asked < 8; asked += 1) await server.anyone.post('/api/estimates', form());
     const answer = await server.anyone.post('/api/estimates', form()).expect(429);
     expect(answer.headers['retry-after']).toMatch(/^\d+$/);
   });
