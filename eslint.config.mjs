@@ -17,6 +17,10 @@ const clientOnly = {
   regex: '^(react($|-)|react-native|expo($|-|/)|@expo/|@tanstack/|@hookform/|socket\\.io-client$)',
   message: 'The server draws nothing. What both sides need goes to shared/contract or calc.',
 };
+const noScreens = {
+  regex: `${own('app', 'tests')}|^(@/|(\\.\\./)+)shared/(client|ui|screens)(/|$)`,
+  message: 'The server never imports screens or hooks. Move what both need to shared/contract or calc.',
+};
 const wholeMathjs = {
   regex: '^mathjs$',
   message: "Pulls 200 KiB into the page. Import the few functions by name from 'mathjs/number', in a part loaded late.",
@@ -36,6 +40,13 @@ const leftOutRouter = {
   regex: '^expo-router$',
   importNames: ['Tabs', 'ExperimentalStack', 'Sitemap', 'useSitemap'],
   message: 'Left out of the web build (server/cli/web/leave-out.cjs). Navigate with Stack and our own bar and rail.',
+};
+
+/** What every floor that draws leaves alone. */
+const inThePage = [serverOnly, wholeMathjs, wholeZod, leftOutRouter, leftOutHead];
+const noBareQueries = {
+  regex: '^(@tanstack/react-query|socket\\.io-client)$',
+  message: 'Use the hooks of shared/client.',
 };
 
 // no-restricted-syntax does not merge between blocks, so each floor lists its own set out of these.
@@ -173,7 +184,7 @@ export default defineConfig([
           message: 'shared/contract imports zod/mini and types of calc, nothing else.',
         },
         {
-          regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?(client|ui)(/|$)`,
+          regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?(client|ui|screens)(/|$)`,
           message: 'shared/contract is what both sides stand on. Move the type or schema here.',
         },
         {
@@ -190,7 +201,7 @@ export default defineConfig([
     files: code('shared/client'),
     rules: {
       ...imports(serverOnly, wholeMathjs, {
-        regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?ui(/|$)`,
+        regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?(ui|screens)(/|$)`,
         message: 'shared/client holds no screens and knows no server code. Share a type through shared/contract.',
       }),
       ...syntax(noDefaultExport, noBarrel, noDecorator),
@@ -201,19 +212,16 @@ export default defineConfig([
     files: code('shared/ui'),
     rules: {
       ...imports(
-        serverOnly,
-        wholeMathjs,
-        wholeZod,
-        leftOutRouter,
-        leftOutHead,
+        ...inThePage,
         {
-          regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?client(/|$)`,
+          regex: `${own('app', 'server', 'tests')}|^(@/shared|(\\.\\./)+)/?(client|screens)(/|$)`,
           message:
-            'shared/ui takes props and fetches nothing. Call the hook in the route of app/ and pass the data down.',
+            'shared/ui takes props and fetches nothing. Call the hook in a part of shared/screens or in the route, and pass the data down.',
         },
         {
           regex: '^(@tanstack/react-query|socket\\.io-client)',
-          message: 'shared/ui fetches nothing. Call the hook in the route of app/ and pass the data down.',
+          message:
+            'shared/ui fetches nothing. Call the hook in a part of shared/screens or in the route, and pass the data down.',
         },
       ),
       ...syntax(noDefaultExport, noBarrel, noDecorator, noAnimatedList, noHtmlTag),
@@ -222,14 +230,32 @@ export default defineConfig([
   { files: ['shared/ui/**/*.web.tsx'], rules: syntax(noDefaultExport, noBarrel, noDecorator) },
 
   {
+    files: code('shared/screens'),
+    rules: {
+      ...imports(
+        ...inThePage,
+        {
+          regex: own('app', 'server', 'tests'),
+          message:
+            'shared/screens holds parts of a screen that ask for their own data. A route of app/ arranges them, not the other way round; share a type with the server through shared/contract.',
+        },
+        {
+          regex: own('calc'),
+          allowTypeImports: true,
+          message:
+            'A part of a screen does not compute. Put the call of calc into a hook of shared/client or a part of shared/ui.',
+        },
+        noBareQueries,
+      ),
+      ...syntax(noDefaultExport, noBarrel, noDecorator, noAnimatedList, noHtmlTag),
+    },
+  },
+
+  {
     files: code('app'),
     rules: {
       ...imports(
-        serverOnly,
-        wholeMathjs,
-        wholeZod,
-        leftOutRouter,
-        leftOutHead,
+        ...inThePage,
         {
           regex: own('server', 'tests'),
           message:
@@ -241,7 +267,7 @@ export default defineConfig([
           message:
             'A route arranges; it does not compute. Put the call of calc into a hook of shared/client or a part of shared/ui.',
         },
-        { regex: '^(@tanstack/react-query|socket\\.io-client)$', message: 'Use the hooks of shared/client.' },
+        noBareQueries,
       ),
       ...syntax(noBarrel, noDecorator, noAnimatedList, noHtmlTag),
     },
@@ -250,42 +276,25 @@ export default defineConfig([
   {
     files: code('server'),
     rules: {
-      ...imports(clientOnly, {
-        regex: `${own('app', 'tests')}|^(@/|(\\.\\./)+)shared/(client|ui)(/|$)`,
-        message: 'The server never imports screens or hooks. Move what both need to shared/contract or calc.',
-      }),
+      ...imports(clientOnly, noScreens),
       ...syntax(noDefaultExport, noBarrel),
       'no-console': 'error',
     },
   },
   {
     files: code('server/routes'),
-    rules: imports(
-      clientOnly,
-      {
-        regex: `${own('app', 'tests')}|^(@/|(\\.\\./)+)shared/(client|ui)(/|$)`,
-        message: 'The server never imports screens or hooks.',
-      },
-      {
-        regex: '^(typeorm|better-sqlite3)$|(^|/)(repositories|entities|migrations)/',
-        message:
-          'A route says who may, what shape, and calls a service. Put the query into a repository and call it from the service.',
-      },
-    ),
+    rules: imports(clientOnly, noScreens, {
+      regex: '^(typeorm|better-sqlite3)$|(^|/)(repositories|entities|migrations)/',
+      message:
+        'A route says who may, what shape, and calls a service. Put the query into a repository and call it from the service.',
+    }),
   },
   {
     files: code('server/services'),
-    rules: imports(
-      clientOnly,
-      {
-        regex: `${own('app', 'tests')}|^(@/|(\\.\\./)+)shared/(client|ui)(/|$)`,
-        message: 'The server never imports screens or hooks.',
-      },
-      {
-        regex: '^express$|(^|/)routes/',
-        message: 'A service knows nothing of HTTP. Throw a domain error with a code; the middleware makes the answer.',
-      },
-    ),
+    rules: imports(clientOnly, noScreens, {
+      regex: '^express$|(^|/)routes/',
+      message: 'A service knows nothing of HTTP. Throw a domain error with a code; the middleware makes the answer.',
+    }),
   },
   // The commands talk to a person at a terminal.
   { files: ['server/cli/**'], rules: { 'no-console': 'off' } },

@@ -3,7 +3,17 @@ import { spawn } from 'node:child_process';
 import fs from 'node:fs';
 import { fromRoot } from './tools.mjs';
 
-const floors = ['calc', 'shared/contract', 'shared/client', 'shared/ui', 'app', 'server', 'tests', 'tests/shared'];
+const floors = [
+  'calc',
+  'shared/contract',
+  'shared/client',
+  'shared/ui',
+  'shared/screens',
+  'app',
+  'server',
+  'tests',
+  'tests/shared',
+];
 const only = process.argv.slice(2);
 const waiting = floors.filter((floor) => (only.length === 0 || only.includes(floor)) && hasSource(floor));
 const failed = [];
