@@ -1,0 +1,28 @@
+import { useLocalSearchParams } from 'expo-router';
+import { useMemo, useState } from 'react';
+import { emptyPlan, type PlanTyped } from '@/shared/ui/plan/plan-typed';
+
+/** What the address brings along: a spare from the stock, or everything of a top-up. Read once; what is typed then counts. */
+export function useAddress(): { topUpOf: string | null; initial: PlanTyped } {
+  const params = useLocalSearchParams();
+  const [address] = useState(params);
+  return useMemo(() => {
+    const text = (name: string): string => {
+      const value = address[name];
+      return (Array.isArray(value) ? value[0] : value) ?? '';
+    };
+    return {
+      topUpOf: text('topUpOf') || null,
+      initial: {
+        ...emptyPlan,
+        spareId: text('spare'),
+        targetVolts: text('target'),
+        toleranceMillivolts: text('tolerance'),
+        meterId: text('meter'),
+        packCelsius: text('celsius'),
+        repairRef: text('repair'),
+        modulePosition: text('position'),
+      },
+    };
+  }, [address]);
+}

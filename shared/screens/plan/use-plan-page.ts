@@ -1,0 +1,87 @@
+import { useState } from 'react';
+import { isProblem } from '@/shared/client/api-problem';
+import { useNow } from '@/shared/client/clock';
+import { useDraft } from '@/shared/client/drafts';
+import { usePlan } from '@/shared/client/plans';
+import { useSettled } from '@/shared/client/settled';
+import { useSpares } from '@/shared/client/spares';
+import type { PlanRequest } from '@/shared/contract/plan';
+import { useFormats } from '@/shared/ui/format/formats';
+import { dayOf } from '@/shared/ui/format/zone';
+import { bestOption } from '@/shared/ui/plan/best-option';
+import { isOfTheModule } from '@/shared/ui/plan/plan-refused';
+import { fieldOf, requestOf, type PlanField, type PlanTyped } from '@/shared/ui/plan/plan-typed';
+import { useAddress } from './use-address';
+import { useOtherSpares } from './use-other-spares';
+
+/** Numbers are reckoned again this long after the last key. */
+const settleMs = 400;
+
+/** What the page of a plan knows: what is typed, what was reckoned from it, and which way is chosen. */
+export function usePlanPage() {
+  const { topUpOf, initial } = useAddress();
+  const draft = useDraft(`plan.${topUpOf ?? initial.spareId}`, initial);
+  const typed = draft.value;
+  const { zone } = useFormats();
+  const now = useNow(30_000);
+  const today = dayOf(now, zone);
+  const spares = useSpares();
+  const [left, setLeft] = useState<Partial<Record<PlanField, true>>>({});
+  const [tried, setTried] = useState(false);
+  const [picked, setPicked] = useState<string | null>(null);
+  const { request, errors } = requestOf(typed, { zone, today, now });
+  // What came whole with the address or the draft is told in a few lines; anything else is still to be typed.
+  const [open, setOpen] = useState(request === null);
+  const settled = useSettled<PlanRequest | null>(request, settleMs);
+  const plan = usePlan(settled);
+
+  const dto = settled && plan.data && !plan.isError ? plan.data : null;
+  const refused = dto !== null && dto.plan.refusals.length > 0;
+  const chosen =
+    dto === null || refused ? null : (dto.plan.options.find((option) => option.id === picked) ?? bestOption(dto.plan));
+  const spare = spares.data?.find((other) => other.id === typed.spareId) ?? null;
+  const others = useOtherSpares(spare, refused && dto.plan.refusals.some(isOfTheModule) ? settled : null, spares.data);
+
+  const shown = Object.fromEntries(
+    Object.entries(errors).filter(([name]) => tried || left[name as PlanField]),
+  ) as Partial<Record<PlanField, string>>;
+  const serverFields = isProblem(plan.error)
+    ? Object.fromEntries(Object.entries(plan.error.fields).map(([path, text]) => [fieldOf(path), text]))
+    : {};
+
+  return {
+    topUpOf,
+    typed,
+    now,
+    today,
+    spares: spares.data,
+    spare,
+    /** The plan's request as it is typed; null while something is missing or wrong. */
+    request,
+    /** The request that is reckoned, a moment after the last key. */
+    settled,
+    plan,
+    dto,
+    /** The spare is ruled out: there is no way to choose. */
+    refused,
+    chosen,
+    /** Spares that could be taken in place of a refused one. */
+    others,
+    /** The sentences to show, of fields that were left or all after sending was tried. */
+    errors: { ...shown, ...serverFields },
+    /** How many fields need a change, after sending was tried. */
+    wrong: tried ? Object.keys(errors).length : 0,
+    open,
+    setOpen,
+    restored: draft.restored,
+    change: (next: Partial<PlanTyped>) => draft.set((last) => ({ ...last, ...next })),
+    choose: setPicked,
+    leave: (field: PlanField) => setLeft((last) => ({ ...last, [field]: true })),
+    /** Sending was tried: every sentence is shown. */
+    tryAll: () => setTried(true),
+    /** Forgets what was typed; what the address brought stays. */
+    clearDraft: draft.clear,
+  };
+}
+
+export type PlanPage = ReturnType<typeof usePlanPage>;

@@ -1,0 +1,35 @@
+import { useGate } from '@/shared/client/gate';
+import { useModuleTypes } from '@/shared/client/module-types';
+import { partState } from '@/shared/client/part-state';
+import { whoMay } from '@/shared/ui/workshop/may-change';
+import { SectionBlock } from '@/shared/ui/workshop/section-block';
+import { TypesTable } from '@/shared/ui/workshop/types-table';
+import { AddLink } from './add-link';
+import type { PartProps } from './part-props';
+import { NothingYet } from './part-words';
+import { useGo } from './use-go';
+
+/** Module types, each with the limits of its maker. */
+export function ModuleTypesPart({ titled }: PartProps) {
+  const go = useGo();
+  const gate = useGate('equipment:write');
+  const types = useModuleTypes();
+  return (
+    <SectionBlock
+      id="module-types"
+      title="Module types"
+      titled={titled}
+      aside={<AddLink title="add a type" href="/workshop/module-types/new" may={gate.may} />}
+      state={partState(types)}
+      what="the module types"
+      onRetry={() => void types.refetch()}
+      note={whoMay(gate)}
+    >
+      {types.data?.length === 0 ? (
+        <NothingYet words="No module type yet. Every spare is of one." />
+      ) : (
+        <TypesTable types={types.data ?? []} onOpen={(type) => go(`/workshop/module-types/${type.id}`)} />
+      )}
+    </SectionBlock>
+  );
+}

@@ -1,0 +1,23 @@
+import type { ReactNode } from 'react';
+import type { SectionKey } from '@/shared/ui/workshop/sections';
+import { ChargersPart } from './chargers-part';
+import { HoursPart } from './hours-part';
+import { LimitsPart } from './limits-part';
+import { MetersPart } from './meters-part';
+import { ModuleTypesPart } from './module-types-part';
+import type { PartProps } from './part-props';
+import { PeoplePart } from './people-part';
+import { ResistorsPart } from './resistors-part';
+import { WallsPart } from './walls-part';
+
+/** The part of each section. */
+export const workshopParts: Record<SectionKey, (props: PartProps) => ReactNode> = {
+  people: PeoplePart,
+  chargers: ChargersPart,
+  'module-types': ModuleTypesPart,
+  meters: MetersPart,
+  resistors: ResistorsPart,
+  limits: LimitsPart,
+  hours: HoursPart,
+  walls: WallsPart,
+};
