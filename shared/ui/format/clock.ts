@@ -101,7 +101,10 @@ export type InstantBand = Band;
 export const readyAt = (band: InstantBand, zone: string, now: number, marks = pointMarks): string =>
   moment(told(band.p50, band.p50, now), zone, now, marks);
 
-/** Its band: '16:40–18:05'; a bound on another day than the likely one says its weekday. */
+/**
+ * Its band: '16:40–18:05'; a bound on another day than the likely one says its weekday. Where only a timer is left to run
+ * both ends are one minute: 'to the minute'.
+ */
 export function readyBounds(band: InstantBand, zone: string, now: number, marks = pointMarks): string {
   const likelyDay = dayOf(told(band.p50, band.p50, now), zone);
   const bound = (instant: number) => {
@@ -110,7 +113,8 @@ export function readyBounds(band: InstantBand, zone: string, now: number, marks 
     const text = clock(at, zone, marks);
     return day === likelyDay ? text : `${weekdayOf(day).slice(0, 3)}${NBSP}${text}`;
   };
-  return `${bound(band.p10)}${EN_DASH}${bound(band.p90)}`;
+  const [early, late] = [bound(band.p10), bound(band.p90)];
+  return early === late ? 'to the minute' : `${early}${EN_DASH}${late}`;
 }
 
 /** 'ready 17:05 (16:40–18:05)' */

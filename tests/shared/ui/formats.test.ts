@@ -176,6 +176,12 @@ describe('clock and calendar in the workshop’s zone', () => {
     expect([readyAt(band, zone, now), readyBounds(band, zone, now)]).toEqual(['14:24', '14:18–14:51']);
   });
 
+  it('says to the minute where only the rest’s timer runs, and a span where a minute lies between', () => {
+    const timer = { p10: at(14, 24), p50: at(14, 24), p90: at(14, 24) };
+    expect(readyWithBand(timer, zone, now)).toBe('ready 14:24 (to the minute)');
+    expect(readyBounds({ ...timer, p90: at(14, 25) }, zone, now)).toBe('14:24–14:25');
+  });
+
   it('names the day of a bound that falls on another day than the likely finish', () => {
     const band = { p10: at(23, 30), p50: at(0, 30, 10), p90: at(2, 0, 10) };
     expect(readyWithBand(band, zone, now)).toBe(`ready Wed${N}00:30 (Tue${N}23:30–02:00)`);
