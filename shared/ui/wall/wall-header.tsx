@@ -92,7 +92,7 @@ export function StaleBand({ workshop, since, now }: { workshop: string | null; s
       </WallText>
       <View style={styles.grow} />
       {workshop ? (
-        <WallText size={40} tone="onCheckDue">
+        <WallText size={40} tone="onCheckDue" heading={1}>
           {workshop}
         </WallText>
       ) : null}
