@@ -1,10 +1,17 @@
+import type { ChangedDto } from '@/shared/contract/common';
+
 /** Errors the rules of the product raise; one middleware turns them into problem details. */
 export class DomainError extends Error {
   constructor(
     readonly status: number,
     readonly code: string,
     message: string,
-    readonly extra: { fields?: Record<string, string>; present?: unknown; retryAfterS?: number } = {},
+    readonly extra: {
+      fields?: Record<string, string>;
+      present?: unknown;
+      changed?: ChangedDto;
+      retryAfterS?: number;
+    } = {},
   ) {
     super(message);
     this.name = 'DomainError';
@@ -18,8 +25,8 @@ export const invalid = (
   fields: Record<string, string>,
   message = 'Some of this cannot be taken as it is.',
 ): DomainError => new DomainError(400, 'invalid', message, { fields });
-export const conflict = (code: string, message: string, present?: unknown): DomainError =>
-  new DomainError(409, code, message, { present });
+export const conflict = (code: string, message: string, present?: unknown, changed?: ChangedDto): DomainError =>
+  new DomainError(409, code, message, { present, changed });
 export const stale = (present: unknown): DomainError =>
   new DomainError(412, 'stale', 'Somebody else has changed this meanwhile. Here is how it stands now.', { present });
 export const tooMany = (retryAfterS: number): DomainError =>

@@ -44,7 +44,7 @@ function foreseen(error: unknown): DomainError | null {
 }
 
 function sendProblem(response: Response, error: DomainError, requestId: string | undefined): void {
-  const { fields, present, retryAfterS } = error.extra;
+  const { fields, present, changed, retryAfterS } = error.extra;
   const problem: ProblemDto = {
     type: 'about:blank',
     title: titles[error.status] ?? 'Failed',
@@ -54,6 +54,7 @@ function sendProblem(response: Response, error: DomainError, requestId: string |
     ...(requestId ? { requestId } : {}),
     ...(fields ? { fields } : {}),
     ...(present !== undefined ? { present } : {}),
+    ...(changed ? { changed } : {}),
   };
   if (retryAfterS !== undefined) response.set('Retry-After', String(Math.max(1, Math.ceil(retryAfterS))));
   response.status(error.status).type('application/problem+json').send(JSON.stringify(problem));

@@ -1,5 +1,5 @@
 import type { Stage } from '@/shared/contract/charge';
-import { conflict, type DomainError } from '../errors/domain-error';
+import { conflict, DomainError } from '../errors/domain-error';
 import { chargeCard } from './charge-dto';
 import { titleOf } from './charge-words';
 import type { ChargeWrite } from './charge-write';
@@ -19,6 +19,11 @@ const words: Record<Stage, string> = {
   stopped: 'was stopped',
 };
 
+const CODE = 'wrong_stage';
+
 /** 409: the act does not fit the stage; with the charge as it stands, and the sentence that says what does. */
 export const wrongStage = ({ file, now }: ChargeWrite, so: string): DomainError =>
-  conflict('wrong_stage', `${titleOf(file.charge)} ${words[file.charge.stage]}. ${so}`, chargeCard(file, now));
+  conflict(CODE, `${titleOf(file.charge)} ${words[file.charge.stage]}. ${so}`, chargeCard(file, now));
+
+export const isWrongStage = (error: unknown): error is DomainError =>
+  error instanceof DomainError && error.code === CODE;

@@ -10,7 +10,6 @@ import type { Alert } from '../entities/alert';
 import type { Charge } from '../entities/charge';
 import type { ChargeEvent } from '../entities/charge-event';
 import type { LookIn } from '../entities/look-in';
-import { stale } from '../errors/domain-error';
 import { deleteLookIns, insertEvents, insertLookIns } from '../repositories/charge-rows.repository';
 import { raiseBoardRev, updateCharge } from '../repositories/charges.repository';
 import { alertDto } from './alert-dto';
@@ -20,11 +19,13 @@ import { chargeDto } from './charge-dto';
 import { loadFile, type ChargeFile } from './charge-file';
 import { syncHolds } from './charge-holds';
 import { lookInChanges } from './charge-look-ins';
+import { isWrongStage } from './charge-stage-conflict';
 import { progress, type Note } from './charge-progress';
 import { newId } from './ids';
 import { toInstant } from './instants';
 import { refusingTaken } from './unique-taken';
 import { inTransaction } from './unit-of-work';
+import { lastChange, staleCharge, toldBy } from './who-changed';
 
 export interface ChargeWrite {
   manager: EntityManager;
@@ -62,15 +63,22 @@ export async function changeCharge(
 ): Promise<ChargeDto> {
   const changed = inTransaction(deps, async (manager) => {
     const file = await loadFile(manager, member.workshopId, id);
-    if (rev !== null && file.charge.rev !== rev) throw stale(await chargeDto(manager, deps.config, file, member, now));
+    const last = () => lastChange(manager, file, member, now);
+    if (rev !== null && file.charge.rev !== rev)
+      throw staleCharge(await chargeDto(manager, deps.config, file, member, now), await last());
     const notes: Note[] = [];
-    await act({
+    const write: ChargeWrite = {
       manager,
       file,
       member,
       now,
       note: (kind, text, at = now) => notes.push({ at, kind, personId: member.personId, text }),
-    });
+    };
+    try {
+      await act(write);
+    } catch (error) {
+      throw isWrongStage(error) ? toldBy(error, await last()) : error;
+    }
     file.charge.rev += 1;
     const done = await settle(manager, file, now, notes);
     return { dto: await chargeDto(manager, deps.config, file, member, now), announcement: done };

@@ -17,6 +17,7 @@ import { newId } from './ids';
 import { planFor, type PlanInputs } from './plan-inputs';
 import { refusingTaken } from './unique-taken';
 import { inTransaction } from './unit-of-work';
+import { lastChange, toldBy } from './who-changed';
 
 /**
  * Keeps one option of a plan as a charge. The plan is made again from what is known now; where the option is not among
@@ -29,7 +30,7 @@ export async function keepPlan(deps: Deps, member: Member, request: KeepPlanRequ
   const kept = inTransaction(deps, async (manager) => {
     const done: Announcement[] = [];
     const toppedUp = request.topUpOf ? await toppedUpFile(manager, member, request, request.topUpOf) : null;
-    await refuseTakenSpare(manager, member, request.spareId, toppedUp);
+    await refuseTakenSpare(manager, member, request.spareId, toppedUp, now);
     const planned = await planFor(manager, member.workshopId, request, now);
     const option = optionOf(planned.dto, request.optionId);
     const number = `C-${String(await nextChargeNumber(manager, member.workshopId)).padStart(4, '0')}`;
@@ -73,10 +74,11 @@ async function refuseTakenSpare(
   member: Member,
   spareId: string,
   toppedUp: ChargeFile | null,
+  now: number,
 ): Promise<void> {
   const open = await findOpenChargeOfSpare(manager, member.workshopId, spareId);
   if (open === null || open.id === toppedUp?.charge.id) return;
-  throw conflict(
+  const taken = conflict(
     'spare_taken',
     `This spare is on ${titleOf(open)} already. Take another spare, or go on with that charge.`,
     {
@@ -85,6 +87,8 @@ async function refuseTakenSpare(
       stage: open.stage,
     },
   );
+  const file = await loadFile(manager, member.workshopId, open.id);
+  throw toldBy(taken, await lastChange(manager, file, member, now, ['planned']));
 }
 
 /** @throws DomainError with the plan as it is now, where the option is not one of its ways */

@@ -2,7 +2,7 @@
 import type { PlanOption } from '@/calc/plan-types';
 import type { AnswerCheckInput, ChargeDto } from '@/shared/contract/charge';
 import type { Deps, Member } from '../deps';
-import { conflict, DomainError, invalid, stale } from '../errors/domain-error';
+import { conflict, DomainError, invalid } from '../errors/domain-error';
 import { answersOf, replaceAnswer, updateHold } from '../repositories/charge-rows.repository';
 import { deleteCharge, raiseBoardRev, updateCharge } from '../repositories/charges.repository';
 import { checkSheet } from './charge-checks';
@@ -16,6 +16,7 @@ import { changeCharge } from './charge-write';
 import { newId } from './ids';
 import { fromInstant, toInstant } from './instants';
 import { inTransaction } from './unit-of-work';
+import { lastChange, staleCharge, toldBy } from './who-changed';
 
 /**
  * Answers one check before clipping on; an earlier answer stays with the charge.
@@ -132,13 +133,12 @@ export async function dropCharge(deps: Deps, member: Member, id: string, rev: nu
   const boardRev = await inTransaction(deps, async (manager) => {
     const file = await loadFile(manager, workshopId, id);
     const { charge } = file;
-    if (charge.rev !== rev) throw stale(await chargeDto(manager, deps.config, file, member, now));
-    if (!isWaitingToStart(charge.stage))
-      throw conflict(
-        'wrong_stage',
-        `${titleOf(charge)} is begun. Stop it instead: what has happened is kept.`,
-        chargeCard(file, now),
-      );
+    const last = await lastChange(manager, file, member, now);
+    if (charge.rev !== rev) throw staleCharge(await chargeDto(manager, deps.config, file, member, now), last);
+    if (!isWaitingToStart(charge.stage)) {
+      const begun = `${titleOf(charge)} is begun. Stop it instead: what has happened is kept.`;
+      throw toldBy(conflict('wrong_stage', begun, chargeCard(file, now)), last);
+    }
     await deleteCharge(manager, workshopId, id);
     return raiseBoardRev(manager, workshopId);
   });

@@ -15,7 +15,7 @@ import { markVisit } from './charge-visit';
 import { ampHoursText, bare, durationText, clockText, listText, titleOf } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
-import { holdersOfStep, takenText } from './start-block';
+import { channelTaken, holdersOfStep } from './start-block';
 import { takeChannels } from './start-charge.service';
 
 /** Begin of the stretch that runs, with its name for a sentence. */
@@ -114,13 +114,7 @@ export function nextStep(
     if (!isRunning(charge.stage) || next === null) throw wrongStage(write, 'No further step waits.');
     const at = actInstant(file, input.at, now, lastBegin(write));
     const [holder] = await holdersOfStep(write.manager, file, next);
-    if (holder)
-      throw conflict('channel_taken', takenText(holder), {
-        chargeId: holder.chargeId,
-        title: holder.title,
-        stage: holder.stage,
-        channelName: holder.channelName,
-      });
+    if (holder) throw await channelTaken(write, holder);
     const wait = swapWait(file);
     await endRun(write, wait === null ? at : Math.min(wait.since, at), SWAP_REASON);
     const early = wait === null ? ' The step before was ended by hand, earlier than reckoned.' : '';

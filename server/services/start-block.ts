@@ -1,10 +1,13 @@
 import type { EntityManager } from 'typeorm';
+import type { Member } from '../deps';
+import { conflict, type DomainError } from '../errors/domain-error';
 import { runningHoldsOn } from '../repositories/charge-rows.repository';
 import { chargeNames } from '../repositories/charges.repository';
 import { sheetBlock, type CheckSheet } from './charge-checks';
-import type { ChargeFile } from './charge-file';
+import { loadFile, type ChargeFile } from './charge-file';
 import { stepsOfSwap } from './charge-steps';
 import { titleOf } from './charge-words';
+import { lastChange, toldBy } from './who-changed';
 
 export interface ChannelHolder {
   channelName: string;
@@ -35,8 +38,19 @@ export async function holdersOfStep(
   });
 }
 
-export const takenText = (holder: ChannelHolder): string =>
+const takenText = (holder: ChannelHolder): string =>
   `${holder.channelName} is taken by ${holder.title}. Wait until it is free, or plan on another channel.`;
+
+/** 409: a channel of the step runs another charge; with who put it there. */
+export async function channelTaken(
+  { manager, member, now }: { manager: EntityManager; member: Member; now: number },
+  holder: ChannelHolder,
+): Promise<DomainError> {
+  const { chargeId, title, stage, channelName } = holder;
+  const other = await loadFile(manager, member.workshopId, chargeId);
+  const taken = await lastChange(manager, other, member, now, ['started', 'next-step']);
+  return toldBy(conflict('channel_taken', takenText(holder), { chargeId, title, stage, channelName }), taken);
+}
 
 /** Sentence why the timer cannot be started now; null: it can. */
 export async function startBlock(manager: EntityManager, file: ChargeFile, sheet: CheckSheet): Promise<string | null> {

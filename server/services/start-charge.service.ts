@@ -1,7 +1,7 @@
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { Deps, Member } from '../deps';
 import type { RunStretch } from '../entities/run-stretch';
-import { conflict, DomainError } from '../errors/domain-error';
+import { DomainError } from '../errors/domain-error';
 import {
   answersOf,
   insertEvents,
@@ -19,7 +19,7 @@ import { wrongStage } from './charge-stage-conflict';
 import { ampsText, setVoltsText, clockText, listText, titleOf } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
-import { holdersOfStep, takenText } from './start-block';
+import { channelTaken, holdersOfStep } from './start-block';
 
 /**
  * Clips on and starts the timer.
@@ -83,11 +83,9 @@ async function refuseByChecks({ manager, file, now, member }: ChargeWrite): Prom
   });
 }
 
-async function refuseByChannels({ manager, file }: ChargeWrite): Promise<void> {
-  const [holder] = await holdersOfStep(manager, file, 0);
-  if (!holder) return;
-  const { chargeId, title, stage } = holder;
-  throw conflict('channel_taken', takenText(holder), { chargeId, title, stage, channelName: holder.channelName });
+async function refuseByChannels(write: ChargeWrite): Promise<void> {
+  const [holder] = await holdersOfStep(write.manager, write.file, 0);
+  if (holder) throw await channelTaken(write, holder);
 }
 
 /** A plan without a date says how long; its band counts from the start. A queued one has given its word for a time. */

@@ -1,4 +1,4 @@
-import type { ProblemDto } from '@/shared/contract/common';
+import type { ChangedDto, ProblemDto } from '@/shared/contract/common';
 
 /** The server answered, and it was a refusal. `message` is a sentence for people. */
 export class ApiProblem extends Error {
@@ -8,6 +8,8 @@ export class ApiProblem extends Error {
   readonly fields: Readonly<Record<string, string>>;
   /** The present state of what somebody else has changed (412) or taken (409). */
   readonly present: unknown;
+  /** Who made it so and when, where the server knows it; `message` says it already. */
+  readonly changed: ChangedDto | null;
   readonly requestId: string | undefined;
   readonly retryAfterS: number | null;
 
@@ -18,6 +20,7 @@ export class ApiProblem extends Error {
     this.code = problem.code ?? 'unknown';
     this.fields = problem.fields ?? {};
     this.present = problem.present;
+    this.changed = problem.changed ?? null;
     this.requestId = problem.requestId;
     this.retryAfterS = retryAfterS;
   }

@@ -22,18 +22,12 @@ const presentOf = (error: unknown): Partial<ChargeDto> | null =>
     ? (error.present as Partial<ChargeDto>)
     : null;
 
-/** 'Held: the channel is needed. Hella Brandt.': the last thing that happened to the charge an error brings with it. */
-function lastEvent(present: Partial<ChargeDto> | null): string {
-  const last = [...(present?.events ?? [])].sort((a, b) => a.at.localeCompare(b.at)).at(-1);
-  return last ? `${last.text}${last.by ? ` ${last.by.name}.` : ''}` : '';
-}
-
-/** Why an act was refused; after somebody else's also who did what, whose state is on screen by then. */
+/** Why an act was refused; after somebody else's the server says who did what and when, and that state is on screen. */
 export function actProblem(error: unknown): string {
   if (isProblem(error) && Object.keys(error.fields).length > 0) return Object.values(error.fields).join(' ');
-  if (!isConflict(error)) return sentenceOf(error);
-  const won = lastEvent(presentOf(error));
-  return won ? `Somebody was quicker. ${won} Look at it again, then decide.` : sentenceOf(error);
+  return isConflict(error) && error.status === 412
+    ? `${sentenceOf(error)} Look at it again, then decide.`
+    : sentenceOf(error);
 }
 
 /**

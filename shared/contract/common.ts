@@ -55,6 +55,17 @@ export interface ProblemDto {
   fields?: Record<string, string>;
   /** The present state of what somebody else has changed (412) or taken (409). */
   present?: unknown;
+  /** Who made it so and when, where the rows tell (412, 409). */
+  changed?: ChangedDto;
+}
+
+/** Somebody's change that came before one's own. */
+export interface ChangedDto {
+  /** Null: the clock's doing. */
+  by: PersonRef | null;
+  at: Instant;
+  /** What they did, after their name: 'held it'. */
+  did: string;
 }
 
 export interface PersonRef {

@@ -111,13 +111,16 @@ describe('the check after the rest', () => {
       },
     ];
     server.answers['POST /api/charges/c1/rest-check'] = () =>
-      problem(412, 'Somebody else has changed this meanwhile.', { code: 'stale', present: { ...due, rev: 6, events } });
+      problem(412, 'Bram Teal checked it at 13:41; this is how it stands now.', {
+        code: 'stale',
+        present: { ...due, rev: 6, events },
+      });
     draw(<Check />);
     for (const group of ['Group 1', 'Group 2', 'Group 3']) await type(group, '3.905');
     fireEvent.click(await press('Save it: in tolerance'));
     expect(
       await screen.findByText(
-        'Somebody was quicker. Group 2 is 9 mV below, outside. Bram Teal. Look at it again, then decide.',
+        'Bram Teal checked it at 13:41; this is how it stands now. Look at it again, then decide.',
       ),
     ).toBeTruthy();
     expect((await input('Group 3')).value).toBe('3.905');

@@ -49,7 +49,11 @@ describe('a running charge', () => {
     const held = charge('held', { ...mine, rev: 4, heldAt: iso('13:41'), heldFrom: 'charging', events });
     server.answers['POST /api/charges/c1/hold'] = () => {
       server.becomes(held);
-      return problem(412, 'Somebody else has changed this meanwhile.', { code: 'stale', present: held });
+      return problem(412, 'Hella Brandt held it at 13:41; this is how it stands now.', {
+        code: 'stale',
+        present: held,
+        changed: { by: { id: 'h', name: 'Hella Brandt' }, at: iso('13:41'), did: 'held it' },
+      });
     };
     draw(<Live />);
     fireEvent.click(await press('Hold'));
@@ -61,7 +65,7 @@ describe('a running charge', () => {
     fireEvent.click(hold);
     expect(
       await sheet.findByText(
-        'Somebody was quicker. Held: The lift is needed. Hella Brandt. Look at it again, then decide.',
+        'Hella Brandt held it at 13:41; this is how it stands now. Look at it again, then decide.',
       ),
     ).toBeTruthy();
     expect(server.writes()[0]).toMatchObject({ rev: '"3"', body: { reason: 'Nobody is there to look in' } });

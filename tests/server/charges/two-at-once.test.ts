@@ -2,7 +2,22 @@ import { afterEach, beforeEach, expect, test } from 'vitest';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ChannelHold } from '@/server/entities/channel-hold';
 import { RunStretch } from '@/server/entities/run-stretch';
-import { act, answered, at, boardOf, did, kept, key, makeBench, minute, running, seen, type Bench } from './bench';
+import {
+  act,
+  answered,
+  at,
+  boardOf,
+  did,
+  kept,
+  key,
+  makeBench,
+  minute,
+  planned,
+  running,
+  seen,
+  wishOf,
+  type Bench,
+} from './bench';
 
 let bench: Bench;
 beforeEach(async () => {
@@ -67,6 +82,68 @@ test('hold and stop at once: one wins, the other sees what it became', async () 
   const loser = hold.status === 412 ? hold : stop;
   const winner = hold.status === 412 ? stop : hold;
   expect((loser.body as { present: ChargeDto }).present.stage).toBe((winner.body as ChargeDto).stage);
+});
+
+const detail = (answer: { body: unknown }) => (answer.body as { detail: string; changed?: object }).detail;
+const changed = (answer: { body: unknown }) => (answer.body as { changed?: object }).changed;
+
+test('who comes too late is told who won and when, in the workshop’s time, with the present state', async () => {
+  const charge = await running(bench, { spareId: await bench.spare('S-0001'), repairRef: 'R-1' });
+  bench.server.clock.advance(32 * minute);
+  const held = await did(bench, charge, 'hold', { reason: 'The lift is needed' }, 'foreman');
+  // The clock of the tests begins at 10:00 in Berlin.
+  const stale = await act(bench, charge, 'stop', { reason: 'smell' });
+  expect(stale.status).toBe(412);
+  expect(detail(stale)).toBe('Foreman of own held it at 10:32; this is how it stands now.');
+  expect(changed(stale)).toEqual({
+    by: { id: bench.server.own.people.foreman.id, name: 'Foreman of own' },
+    at: held.heldAt,
+    did: 'held it',
+  });
+  // The same person on another phone is told as such.
+  expect(detail(await act(bench, charge, 'stop', { reason: 'smell' }, 'foreman'))).toBe(
+    'You held it at 10:32; this is how it stands now.',
+  );
+  // An act without a revision, and one that does not fit the stage, hear it too.
+  const late = await bench
+    .as('technician')
+    .post(`/api/charges/${charge.id}/checks`, { code: 'isolation', answer: 'no' });
+  expect(late.status).toBe(409);
+  expect(detail(late)).toBe('R-1 is held. Its checks are closed. Foreman of own held it at 10:32.');
+  expect(changed(late)).toMatchObject({ did: 'held it' });
+});
+
+test('what the clock has done is told as the clock’s; what follows from a person’s act is told as that person’s', async () => {
+  const charge = await running(bench, { spareId: await bench.spare('S-0001'), repairRef: 'R-1' });
+  await bench.live(at(charge.currentEndAt) - bench.server.clock.now() + 10 * minute);
+  const byClock = await act(bench, charge, 'hold', { reason: 'late' });
+  expect(byClock.status).toBe(412);
+  expect(detail(byClock)).toMatch(/^It went on by the clock at \d\d:\d\d; this is how it stands now\.$/);
+  expect(changed(byClock)).toMatchObject({ by: null });
+  // The end of current that somebody says brings the rest with it, in the same write.
+  const second = await running(bench, { spareId: await bench.spare('S-0002') }, { channel: 'B1' });
+  await did(bench, second, 'current-off', {}, 'foreman');
+  expect((await seen(bench, second.id)).events.at(-1)?.kind).toBe('resting');
+  expect(detail(await act(bench, second, 'hold', { reason: 'late' }))).toMatch(/^Foreman of own switched it off at /);
+});
+
+test('who finds spare or channel taken is told by whom and since when', async () => {
+  const spareId = await bench.spare('S-0001');
+  const wish = { spareId, repairRef: 'R-1' };
+  const option = await planned(bench, wish);
+  await running(bench, wish);
+  bench.server.clock.advance(5 * minute);
+  const spare = await bench
+    .as('foreman')
+    .post('/api/charges', { ...wishOf(bench, wish), optionId: option.id })
+    .set('Idempotency-Key', key());
+  expect(spare.status).toBe(409);
+  expect(detail(spare)).toMatch(/^This spare is on R-1 already\. .* Technician of own planned it at 10:00\.$/);
+  const second = await answered(bench, await kept(bench, { spareId: await bench.spare('S-0002') }, {}, 'foreman'));
+  const channel = await act(bench, second, 'start', {}, 'foreman');
+  expect(channel.status).toBe(409);
+  expect(detail(channel)).toMatch(/^A1 is taken by R-1\. .* Technician of own started it at 10:00\.$/);
+  expect(changed(channel)).toMatchObject({ by: { name: 'Technician of own' }, did: 'started it' });
 });
 
 test('40 writes of all kinds at once on 8 charges end with every row in place and the board counted up by each', async () => {
