@@ -70,7 +70,7 @@ export async function lastSpareReadings(
 
 export type SpareCharge = Pick<
   Charge,
-  'id' | 'number' | 'repairRef' | 'spareId' | 'stage' | 'targetVolts' | 'createdAt'
+  'id' | 'number' | 'repairRef' | 'spareId' | 'stage' | 'targetVolts' | 'createdAt' | 'rev'
 >;
 
 const chargeColumns = {
@@ -81,6 +81,7 @@ const chargeColumns = {
   stage: true,
   targetVolts: true,
   createdAt: true,
+  rev: true,
 } as const;
 
 /** The open charge of each spare that has one, by the spare's id. */

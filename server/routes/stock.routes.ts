@@ -56,7 +56,8 @@ export const stockRoutes: RoutesModule = (route) => {
     path: '/spares/:id/quarantine',
     policy: { kind: 'capability', capability: 'spare:quarantine' },
     body: quarantineSchema,
-    handle: ({ deps, member, params, body, now }) => quarantineSpare(deps, member, params.id!, body.reason, now),
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) => quarantineSpare(deps, member, params.id!, rev, body, now),
   });
   route({
     method: 'post',

@@ -38,6 +38,8 @@ function stretches(file: ChargeFile, now: number): Stretch[] {
   }));
   const reckoning = charge.reckoning;
   const shift = waitShiftMs(file, now);
+  // Taken off before it began: nothing of its plan has happened.
+  if (charge.startedAt === null && charge.stage === 'stopped') return [];
   if (charge.startedAt === null || reckoning === null)
     return isWaitingToStart(charge.stage)
       ? planned.map((one) => ({ ...one, from: one.from + shift, to: one.to + shift }))

@@ -64,7 +64,7 @@ export function spareDto(
             at: toInstant(spare.quarantinedAt),
             by: personRef(people, spare.quarantinedById ?? ''),
           },
-    charge: charge ? { id: charge.id, title: titleOf(charge), stage: charge.stage } : null,
+    charge: charge ? { id: charge.id, title: titleOf(charge), stage: charge.stage, rev: charge.rev } : null,
     reading: reading ? spareReadingDto(reading, people) : null,
     rev: spare.rev,
   };

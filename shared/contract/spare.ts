@@ -52,7 +52,19 @@ export type SpareInput = z.infer<typeof spareSchema>;
 export const newSpareSchema = z.object({ ...spareSchema.shape, reading: spareReadingSchema });
 export type NewSpareInput = z.infer<typeof newSpareSchema>;
 
-export const quarantineSchema = z.object({ reason });
+/** The charge that waits for a spare, as the person saw it who sets that spare aside. */
+const seenCharge = z.object({ id, rev: z.int().check(z.minimum(1)) });
+
+export const quarantineSchema = z.object({
+  reason,
+  /** What was seen, where it is a condition of the module; left out or null: it stays as it is. */
+  condition: z.optional(z.nullable(z.enum(conditions))),
+  /** Where it goes; left out: it stays where it is. */
+  shelfPlace: z.optional(optionalText('The shelf place', 30)),
+  /** The planned or queued charge that is taken off with it. A spare that one waits for is not set aside without. */
+  charge: z.optional(z.nullable(seenCharge)),
+});
+export type QuarantineInput = z.infer<typeof quarantineSchema>;
 
 export type SpareWhere = 'shelf' | 'charge' | 'quarantine' | 'fitted';
 
@@ -79,7 +91,7 @@ export interface SpareDto extends SpareInput {
   usedCapacityAh: number;
   capacitySdAh: number;
   quarantine: { reason: string; at: Instant; by: PersonRef } | null;
-  charge: { id: string; title: string; stage: string } | null;
+  charge: { id: string; title: string; stage: string; rev: number } | null;
   reading: SpareReadingDto | null;
   rev: number;
 }

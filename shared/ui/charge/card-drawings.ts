@@ -81,7 +81,7 @@ export function cardRibbon(card: ChargeCardDto, clock: CardClock, zero: number):
   const ready = proven.has(card.stage) ? null : readyOf(card, clock);
   const band = ready ? { p10: s(ready.p10), p50: s(ready.p50), p90: s(ready.p90) } : null;
   const nowS = card.startedAt === null ? null : s(clock.now);
-  const begin = segments[0]?.fromS ?? s(Date.parse(card.clipOnAt));
+  const begin = segments[0]?.fromS ?? s(Date.parse(card.stoppedAt ?? card.clipOnAt));
   const drawnEnd = segments.at(-1)?.toS ?? begin + 3600;
   const end = Math.max(band?.p90 ?? drawnEnd, drawnEnd, over.has(card.stage) ? drawnEnd : (nowS ?? begin));
   const next = card.lookIns.find((visit) => visit.doneAt === null)?.id;

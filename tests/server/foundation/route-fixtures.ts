@@ -146,7 +146,10 @@ export const routeFixtures: Record<string, RouteFixture> = {
     params: { id: f.spareId },
     body: readingForm({ meterId: f.meterId }),
   })),
-  'POST /api/spares/:id/quarantine': technician((f) => ({ params: { id: f.spareId }, body: { reason: 'Dropped.' } })),
+  'POST /api/spares/:id/quarantine': technician((f) => ({
+    params: { id: f.spareId },
+    body: { reason: 'Dropped.', condition: 'dented', shelfPlace: 'box', charge: null },
+  })),
   'POST /api/spares/:id/release': foreman((f) => ({ params: { id: f.spareId } })),
   'GET /api/spares/:id/history': technician((f) => ({ params: { id: f.spareId } })),
 

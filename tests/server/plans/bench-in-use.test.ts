@@ -76,6 +76,7 @@ describe('a spare on a charge', () => {
     const aside = await bench
       .as('technician')
       .post(`/api/spares/${runningSpare}/quarantine`, { reason: 'smells' })
+      .set('If-Match', '"1"')
       .expect(409);
     expect(aside.body.detail).toBe(`S-1 is on ${charge.title}. Stop that charge: the quarantine is set with it.`);
   });

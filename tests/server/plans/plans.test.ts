@@ -128,7 +128,10 @@ describe('a plan', () => {
     const deep = await newSpare('S-43', {}, { groupVolts: ['2.41', '2.894'] });
     const swollen = await newSpare('S-44', { condition: 'swollen' });
     const aside = await newSpare('S-45');
-    await technician.post(`/api/spares/${aside.id}/quarantine`, { reason: 'dropped' }).expect(200);
+    await technician
+      .post(`/api/spares/${aside.id}/quarantine`, { reason: 'dropped' })
+      .set('If-Match', '"1"')
+      .expect(200);
     for (const [spare, code, words] of [
       [deep, 'deep-discharged', "under this type's floor of 2.50"],
       [swollen, 'condition', 'swollen'],

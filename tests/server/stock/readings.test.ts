@@ -65,7 +65,10 @@ describe('quarantine', () => {
   it('sets a spare aside with reason, time and name, and a technician may do it but not undo it', async () => {
     const spare = await newSpare('S-32');
     const path = `/api/spares/${spare.id}`;
-    const aside = await technician.post(`${path}/quarantine`, { reason: ' dented at the corner ' }).expect(200);
+    const aside = await technician
+      .post(`${path}/quarantine`, { reason: ' dented at the corner ' })
+      .set('If-Match', '"1"')
+      .expect(200);
     expect(aside.body).toMatchObject({
       where: 'quarantine',
       quarantine: { reason: 'dented at the corner', by: { name: 'Technician of own' } },
@@ -74,7 +77,7 @@ describe('quarantine', () => {
     expect(server.hub.told.at(-1)).toMatchObject({ workshopId: server.own.id, event: 'stock:changed' });
     await technician.post(`${path}/release`).expect(403);
     expect((await technician.get('/api/spares?where=quarantine')).body).toHaveLength(1);
-    const again = await technician.post(`${path}/quarantine`, { reason: 'swollen' }).expect(409);
+    const again = await technician.post(`${path}/quarantine`, { reason: 'swollen' }).set('If-Match', '"1"').expect(409);
     expect(again.body.detail).toBe('S-32 is in quarantine already: dented at the corner');
     expect((await foreman.post(`${path}/release`).expect(200)).body).toMatchObject({
       where: 'shelf',
@@ -84,7 +87,10 @@ describe('quarantine', () => {
   });
 
   it('asks for a reason', async () => {
-    const answer = await technician.post(`/api/spares/${stocked.spare.id}/quarantine`, { reason: '  ' }).expect(400);
+    const answer = await technician
+      .post(`/api/spares/${stocked.spare.id}/quarantine`, { reason: '  ' })
+      .set('If-Match', '"1"')
+      .expect(400);
     expect(answer.body.fields).toEqual({ reason: 'The reason is missing.' });
   });
 });

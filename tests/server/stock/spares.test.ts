@@ -154,7 +154,7 @@ describe('spares', () => {
       await other.get(`${path}/history`),
       await other.patch(path, spareForm(stocked.type.id)).set('If-Match', '"1"'),
       await other.post(`${path}/readings`, readingForm()),
-      await other.post(`${path}/quarantine`, { reason: 'none of theirs' }),
+      await other.post(`${path}/quarantine`, { reason: 'none of theirs' }).set('If-Match', '"1"'),
       await other.post(`${path}/release`),
     ];
     expect(answers.map(({ status }) => status)).toEqual([404, 404, 404, 404, 404, 404]);

@@ -1,15 +1,14 @@
 import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
 import { useState } from 'react';
 import { View } from 'react-native';
-import { isProblem, sentenceOf } from '@/shared/client/api-problem';
+import { isConflict, isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useBoard } from '@/shared/client/board';
-import { useDropCharge } from '@/shared/client/charges';
 import { useNow } from '@/shared/client/clock';
 import { useGate } from '@/shared/client/gate';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useModuleTypes } from '@/shared/client/module-types';
-import { useChangeSpare, useQuarantineSpare, useReleaseSpare, useSpare, useSpareHistory } from '@/shared/client/spares';
+import { useQuarantineSpare, useReleaseSpare, useSpare, useSpareHistory } from '@/shared/client/spares';
 import type { SpareDto } from '@/shared/contract/spare';
 import { moment } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
@@ -17,7 +16,6 @@ import { Button } from '@/shared/ui/primitives/button';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Link } from '@/shared/ui/primitives/link';
 import { Rule } from '@/shared/ui/primitives/rule';
-import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { Columns } from '@/shared/ui/screen/columns';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
@@ -42,7 +40,7 @@ export default function Spare() {
   const router = useRouter();
   const query = useSpare(id);
   const back = () => (router.canGoBack() ? router.back() : router.replace('/spares' as Href));
-  if (query.data) return <Page spare={query.data} onBack={back} />;
+  if (query.data) return <Page spare={query.data} onBack={back} onStale={() => void query.refetch()} />;
   const gone = isProblem(query.error) && query.error.status === 404;
   return (
     <Screen header={<HeaderBar title="Spare" onBack={back} />}>
@@ -63,7 +61,7 @@ export default function Spare() {
   );
 }
 
-function Page({ spare, onBack }: { spare: SpareDto; onBack: () => void }) {
+function Page({ spare, onBack, onStale }: { spare: SpareDto; onBack: () => void; onStale: () => void }) {
   const router = useRouter();
   const { marks } = useFormats();
   const now = useNow(60_000);
@@ -156,37 +154,26 @@ function Page({ spare, onBack }: { spare: SpareDto; onBack: () => void }) {
           </View>
         }
       />
-      {sheet === 'quarantine' ? <Quarantine spare={spare} onClose={() => setSheet(null)} /> : null}
+      {sheet === 'quarantine' ? <Quarantine spare={spare} onClose={() => setSheet(null)} onStale={onStale} /> : null}
       {sheet === 'release' ? <Release spare={spare} onClose={() => setSheet(null)} /> : null}
     </Screen>
   );
 }
 
-function Quarantine({ spare, onClose }: { spare: SpareDto; onClose: () => void }) {
-  const toast = useToast();
+/** @param onStale somebody else was first: read the spare again */
+function Quarantine({ spare, onClose, onStale }: { spare: SpareDto; onClose: () => void; onStale: () => void }) {
   const { zone, marks } = useFormats();
   const now = useNow(60_000);
-  const [quarantine, change, drop] = [useQuarantineSpare(), useChangeSpare(), useDropCharge()];
-  const [problem, setProblem] = useState<string | null>(null);
+  const quarantine = useQuarantineSpare();
   const card = useBoard().data?.charges.find((other) => other.id === spare.charge?.id);
-  const confirm = async ({ reason, condition, shelfPlace }: QuarantineInput) => {
-    setProblem(null);
-    try {
-      // A plan that waits for this spare falls away first: the server sets nothing aside that a charge holds.
-      if (spare.charge) {
-        if (!card) throw new Error('Its charge is not known here yet. Wait a moment and try again.');
-        await drop.mutateAsync({ id: card.id, rev: card.rev });
-      }
-      const aside = await quarantine.mutateAsync({ id: spare.id, reason });
-      await change
-        .mutateAsync({ ...inputOf(aside), condition: condition ?? aside.condition, shelfPlace })
-        .catch((error: unknown) =>
-          toast({ text: `${spare.label} is in quarantine. Its new place was not kept: ${sentenceOf(error)}` }),
-        );
-      onClose();
-    } catch (error) {
-      setProblem(sentenceOf(error));
-    }
+  const confirm = (input: QuarantineInput) => {
+    const { charge } = spare;
+    // The board hears of every change of a charge, the stock only of those that move the spare.
+    const seen = charge && { id: charge.id, rev: Math.max(charge.rev, card?.rev ?? 0) };
+    quarantine.mutate(
+      { id: spare.id, rev: spare.rev, ...input, charge: seen },
+      { onSuccess: onClose, onError: (error) => isConflict(error) && onStale() },
+    );
   };
   const at = card ? ` at ${moment(Date.parse(card.clipOnAt), zone, now, marks)}` : '';
   return (
@@ -197,26 +184,13 @@ function Quarantine({ spare, onClose }: { spare: SpareDto; onClose: () => void }
           ? `It is ${spare.charge.stage} for ${spare.charge.title}${at}. That plan falls away.`
           : 'No plan takes it until a foreman releases it.'
       }
-      busy={quarantine.isPending || change.isPending || drop.isPending}
-      problem={problem}
-      onConfirm={(input) => void confirm(input)}
+      busy={quarantine.isPending}
+      problem={quarantine.error ? sentenceOf(quarantine.error) : null}
+      onConfirm={confirm}
       onClose={onClose}
     />
   );
 }
-
-const inputOf = (spare: SpareDto) => ({
-  id: spare.id,
-  rev: spare.rev,
-  label: spare.label,
-  moduleTypeId: spare.moduleTypeId,
-  shelfPlace: spare.shelfPlace,
-  capacityAh: spare.capacityAh,
-  healthPercent: spare.healthPercent,
-  capacitySource: spare.capacitySource,
-  condition: spare.condition,
-  note: spare.note,
-});
 
 function Release({ spare, onClose }: { spare: SpareDto; onClose: () => void }) {
   const { marks } = useFormats();
