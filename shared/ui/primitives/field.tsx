@@ -5,12 +5,14 @@ import { makeStyles } from '../theme/make-styles';
 import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import { describedBy, FieldFrame, fieldIds, type FieldFrameProps } from './field-frame';
+import { useLeaving } from './leaving';
 import { Txt } from './txt';
 
 export interface FieldProps extends FieldFrameProps {
   /** As typed. Nothing is rewritten while a person types. */
   value: string;
   onChangeText: (text: string) => void;
+  /** It was left; after a press elsewhere only once that press is over. */
   onBlur?: () => void;
   onFocus?: () => void;
   /** 'decimal' and 'whole' bring the number keys and the large numerals; 'text' is words. */
@@ -88,6 +90,7 @@ export function Field({
   const id = useId();
   const input = useRef<TextInput>(null);
   const [focused, setFocused] = useState(false);
+  const leave = useLeaving(onBlur);
   useImperativeHandle(ref, () => ({
     focus: () => input.current?.focus(),
     blur: () => input.current?.blur(),
@@ -118,7 +121,7 @@ export function Field({
           onChangeText={onChangeText}
           onBlur={() => {
             setFocused(false);
-            onBlur?.();
+            leave();
           }}
           onFocus={() => {
             setFocused(true);

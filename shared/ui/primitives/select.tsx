@@ -7,6 +7,7 @@ import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
 import { domElement } from './dom-element';
 import type { FieldHandle } from './field';
 import { describedBy, FieldFrame, fieldIds, type FieldFrameProps } from './field-frame';
+import { useLeaving } from './leaving';
 
 export interface SelectOption<V extends string> {
   value: V;
@@ -43,6 +44,7 @@ export function Select<V extends string>({
   const id = useId();
   const element = useRef<HTMLSelectElement>(null);
   const [focused, setFocused] = useState(false);
+  const leave = useLeaving(onBlur);
   useImperativeHandle(ref, () => ({
     focus: () => element.current?.focus(),
     blur: () => element.current?.blur(),
@@ -67,7 +69,7 @@ export function Select<V extends string>({
           onFocus: () => setFocused(true),
           onBlur: () => {
             setFocused(false);
-            onBlur?.();
+            leave();
           },
           'aria-labelledby': fieldIds(id).label,
           'aria-label': frame.label,

@@ -28,7 +28,8 @@ export function TimeField({
       onChangeText={onChangeText}
       onBlur={() => {
         const minutes = parseTimeOfDay(value);
-        if (minutes !== null) onChangeText(timeOfDayText(minutes));
+        const text = minutes === null ? value : timeOfDayText(minutes);
+        if (text !== value) onChangeText(text);
         onBlur?.();
       }}
       suffix={

@@ -3,6 +3,7 @@ import { View } from 'react-native';
 import { domElement } from '../primitives/dom-element';
 import { Field, type FieldHandle } from '../primitives/field';
 import { describedBy, FieldFrame, fieldIds } from '../primitives/field-frame';
+import { useLeaving } from '../primitives/leaving';
 import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
@@ -33,6 +34,7 @@ export function DayField({
   const id = useId();
   const input = useRef<HTMLInputElement>(null);
   const [focused, setFocused] = useState(false);
+  const leave = useLeaving(onBlur);
   useImperativeHandle(ref, () => ({
     focus: () => input.current?.focus(),
     blur: () => input.current?.blur(),
@@ -51,7 +53,7 @@ export function DayField({
           onFocus: () => setFocused(true),
           onBlur: () => {
             setFocused(false);
-            onBlur?.();
+            leave();
           },
           'aria-labelledby': fieldIds(id).label,
           'aria-describedby': describedBy(id, frame),
