@@ -1,10 +1,12 @@
 /**
  * Forms on the contract's own schema: what the server would refuse is refused here with the same sentence. Checked on
- * leaving a field; on sending the first wrong field gets the focus. What is typed stays, whatever happens.
+ * leaving a field, which the kit's fields report once the press that took the focus is over; on sending the first wrong
+ * field gets the focus. What is typed stays, whatever happens.
  */
 import { standardSchemaResolver } from '@hookform/resolvers/standard-schema';
 import { useEffect, useState } from 'react';
 import {
+  get,
   useController,
   useForm,
   type FieldErrors,
@@ -14,6 +16,7 @@ import {
   type UseFormReturn,
 } from 'react-hook-form';
 import type * as z from 'zod/mini';
+import { fieldSentence } from '@/shared/contract/field-sentence';
 import { isProblem, sentenceOf } from './api-problem';
 import { readDraft, writeDraft } from './draft-store';
 import { useSession } from './session';
@@ -53,10 +56,6 @@ const countOf = (errors: object): number =>
     if (name === 'root' || !error || typeof error !== 'object') return sum;
     return sum + ('message' in error && typeof error.message === 'string' ? 1 : countOf(error as object));
   }, 0);
-
-/** zod says no more than this where nothing was chosen. */
-const plain = (message: string | undefined): string | undefined =>
-  message === undefined || message === '' || /^Invalid (input|option)/.test(message) ? 'Choose or type this.' : message;
 
 /** '3 fields need a change.' */
 export const wrongSentence = (count: number): string =>
@@ -98,6 +97,18 @@ export function useContractForm<Values extends FieldValues, Output>({
       },
     });
   }, [form, draft, personId, secrets]);
+
+  // A sentence that is being answered goes at the first key; leaving the field judges what was typed.
+  useEffect(
+    () =>
+      form.subscribe({
+        formState: { values: true },
+        callback: ({ name, errors: present }) => {
+          if (name && typeof get(present, `${name}.message`) === 'string') form.clearErrors(name as FieldPath<Values>);
+        },
+      }),
+    [form],
+  );
 
   const refuse = (cause: unknown) => {
     setError(cause);
@@ -161,6 +172,6 @@ export function useFormField<Values extends FieldValues, Name extends FieldPath<
     onChangeText: (text: string) => field.onChange(text),
     onBlur: field.onBlur,
     ref: field.ref,
-    error: fieldState.error ? plain(fieldState.error.message) : undefined,
+    error: fieldState.error ? fieldSentence(fieldState.error.message) : undefined,
   };
 }

@@ -13,7 +13,7 @@ import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Forbidden } from '@/shared/ui/states/forbidden';
-import { BoundField, BoundSelect } from '@/shared/ui/workshop/bound';
+import { BoundField, BoundSelect } from '@/shared/ui/forms/bound';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FormPart } from '@/shared/ui/workshop/field-grid';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';

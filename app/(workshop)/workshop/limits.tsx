@@ -9,7 +9,7 @@ import { changeWorkshopSchema, type WorkshopDto } from '@/shared/contract/worksh
 import { useFormats } from '@/shared/ui/format/formats';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
-import { BoundField } from '@/shared/ui/workshop/bound';
+import { BoundField } from '@/shared/ui/forms/bound';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';
 import { FormScreen, Restored } from '@/shared/ui/workshop/form-screen';

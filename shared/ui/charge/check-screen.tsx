@@ -7,6 +7,7 @@ import { moment } from '../format/clock';
 import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { deviation } from '../format/quantities';
+import { BoundField } from '../forms/bound';
 import { GroupFields } from '../group-volts/group-fields';
 import { asGroupForm, padAbove } from '../group-volts/group-form';
 import { GroupPad } from '../group-volts/group-pad';
@@ -19,7 +20,6 @@ import { HeaderBar } from '../screen/header-bar';
 import { Screen } from '../screen/screen';
 import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { BoundField } from './bound-field';
 import { judgeTyped, type CheckValues } from './check-form';
 import { CheckHead } from './check-head';
 import { verdictWords } from './check-words';
@@ -161,7 +161,7 @@ function Work({
           />
         </View>
         <View style={styles.half}>
-          <BoundField control={form.control} name="celsius" label="At the module" kind="decimal" unit="°C" />
+          <BoundField form={form} name="celsius" label="At the module" kind="decimal" unit="°C" />
         </View>
       </View>
     </View>

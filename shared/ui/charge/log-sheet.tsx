@@ -5,6 +5,7 @@ import type { ChargeDto, ReadingDto } from '@/shared/contract/charge';
 import { clock, moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { amps, celsius, clipVolts } from '../format/quantities';
+import { BoundField } from '../forms/bound';
 import { GroupFields } from '../group-volts/group-fields';
 import { asGroupForm, padAbove } from '../group-volts/group-form';
 import { GroupPad } from '../group-volts/group-pad';
@@ -16,7 +17,6 @@ import { TimeField } from '../primitives/time-field';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { BoundField } from './bound-field';
 import { isFlowing } from './card-model';
 import { nothingTyped, type LogValues } from './log-form';
 import { OddCallOut } from './odd-call-out';
@@ -105,7 +105,7 @@ export function LogSheet(props: LogSheetProps) {
       <View style={styles.three}>
         <View style={styles.wider}>
           <BoundField
-            control={control}
+            form={form}
             name="terminalVolts"
             label="At the clips"
             kind="decimal"
@@ -118,7 +118,7 @@ export function LogSheet(props: LogSheetProps) {
         </View>
         <View style={styles.one}>
           <BoundField
-            control={control}
+            form={form}
             name="amps"
             label="Current"
             kind="decimal"
@@ -129,7 +129,7 @@ export function LogSheet(props: LogSheetProps) {
           />
         </View>
         <View style={styles.narrower}>
-          <BoundField control={control} name="celsius" label="Module" kind="decimal" unit="°C" onLeave={look} />
+          <BoundField form={form} name="celsius" label="Module" kind="decimal" unit="°C" onLeave={look} />
         </View>
       </View>
       <Groups {...props} odd={odd} onLeave={look} />
@@ -137,7 +137,7 @@ export function LogSheet(props: LogSheetProps) {
       {correcting ? (
         <View style={styles.part}>
           <BoundField
-            control={control}
+            form={form}
             name="reason"
             label="What was wrong"
             hint="The old reading stays in the log."

@@ -2,6 +2,7 @@ import { useController, type UseFormReturn } from 'react-hook-form';
 import { View } from 'react-native';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { asGroupForm, padAbove } from '../group-volts/group-form';
+import { BoundField } from '../forms/bound';
 import { GroupFields } from '../group-volts/group-fields';
 import { GroupPad } from '../group-volts/group-pad';
 import { BottomSheet } from '../primitives/bottom-sheet';
@@ -10,7 +11,6 @@ import { Select } from '../primitives/select';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { BoundField } from './bound-field';
 import type { CheckValues } from './check-form';
 
 /** A new reading of the spare before it is clipped on: its temperature and its groups. */
@@ -57,7 +57,7 @@ export function ReadAgainSheet({
       <View style={styles.stack}>
         <View style={styles.pair}>
           <View style={styles.half}>
-            <BoundField control={form.control} name="celsius" label="Module is at" kind="decimal" unit="°C" autoFocus />
+            <BoundField form={form} name="celsius" label="Module is at" kind="decimal" unit="°C" autoFocus />
           </View>
           <View style={styles.half}>
             <MeterSelect form={form} meters={meters} />

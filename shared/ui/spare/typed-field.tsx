@@ -1,5 +1,6 @@
 import type { ReactNode, Ref } from 'react';
 import { useController, type FieldPath, type FieldValues, type UseFormReturn } from 'react-hook-form';
+import { fieldSentence } from '@/shared/contract/field-sentence';
 import type { FieldHandle } from '../primitives/field';
 
 export interface TypedFieldProps {
@@ -28,13 +29,9 @@ export function TypedField<Values extends FieldValues>({
   children: (field: TypedFieldProps) => ReactNode;
 }) {
   const { field, fieldState } = useController({ control: form.control, name });
-  const message = fieldState.error?.message;
   const value = (field.value ?? '') as string;
-  const unspoken = !message || /^Invalid (input|option)/.test(message) || (value === '' && missing !== undefined);
   const error = fieldState.error
-    ? unspoken
-      ? (missing ?? 'Choose or type this.')
-      : message
+    ? fieldSentence(value === '' && missing !== undefined ? undefined : fieldState.error.message, missing)
     : fieldState.isTouched && value !== ''
       ? (judge?.(value) ?? undefined)
       : undefined;

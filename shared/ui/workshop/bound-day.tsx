@@ -1,8 +1,8 @@
-import { useController, type FieldPath, type FieldValues } from 'react-hook-form';
+import type { FieldPath, FieldValues } from 'react-hook-form';
 import { useFormats } from '../format/formats';
 import { dayOf, instantOfDay } from '../format/zone';
+import { useBound, type TypedForm } from '../forms/bound';
 import { Link } from '../primitives/link';
-import type { TypedForm } from './bound';
 import { DayField } from './day-field';
 
 const noon = 12 * 60;
@@ -25,9 +25,7 @@ export function BoundDay<V extends FieldValues>({
   readOnly: boolean;
 }) {
   const { zone } = useFormats();
-  const { field, fieldState } = useController<V>({ control: form.control as never, name });
-  const { value, onChange, onBlur, ref } = field;
-  const bound = { onBlur, ref, error: fieldState.error?.message };
+  const { value, onChange, ...bound } = useBound({ form, name });
   const put = (day: string) => onChange(day === '' ? '' : new Date(instantOfDay(day, noon, zone)).toISOString());
   const instant = typeof value === 'string' && value !== '' ? Date.parse(value) : null;
   return (

@@ -5,7 +5,7 @@ import { Link } from '../primitives/link';
 import { SegmentSwitch } from '../primitives/segment-switch';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
-import { BoundCheck, BoundField, type TypedForm } from './bound';
+import { BoundCheck, BoundField, type TypedForm } from '../forms/bound';
 import { channelFieldNames as names, senseNames, type ChannelTexts, type ChargerTexts } from './charger-form';
 import { FieldGrid } from './field-grid';
 

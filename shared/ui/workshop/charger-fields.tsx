@@ -2,7 +2,7 @@ import { useFieldArray } from 'react-hook-form';
 import { View } from 'react-native';
 import type { ChannelDto, MeterDto } from '@/shared/contract/equipment';
 import { Button } from '../primitives/button';
-import { BoundField, BoundSelect, type TypedForm } from './bound';
+import { BoundField, BoundSelect, type TypedForm } from '../forms/bound';
 import { ChannelFields } from './channel-fields';
 import { emptyChannel, type ChargerTexts } from './charger-form';
 import { FieldGrid } from './field-grid';

@@ -4,7 +4,7 @@ import { CheckBox } from '../primitives/check-box';
 import { TimeField } from '../primitives/time-field';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
-import type { TypedForm } from './bound';
+import type { TypedForm } from '../forms/bound';
 import { weekDays, type HourTexts } from './settings-form';
 
 const usual = { from: '08:00', to: '17:00' };

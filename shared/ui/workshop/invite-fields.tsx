@@ -5,7 +5,7 @@ import { ProblemLine } from '../auth/problem-line';
 import { Button } from '../primitives/button';
 import { ChoiceList } from '../primitives/choice-row';
 import { Txt } from '../primitives/txt';
-import { BoundField, type TypedForm } from './bound';
+import { BoundField, type TypedForm } from '../forms/bound';
 import { roleWords } from './role-words';
 
 export interface InviteTexts {

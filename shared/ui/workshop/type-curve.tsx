@@ -7,7 +7,7 @@ import { Txt } from '../primitives/txt';
 import { Surface } from '../theme/surface';
 import { radius } from '../theme/tokens';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import type { TypedForm } from './bound';
+import type { TypedForm } from '../forms/bound';
 import type { TypeTexts } from './type-form';
 
 const CurvePicture = lazy(() => import('./curve-picture').then((part) => ({ default: part.CurvePicture })));

@@ -1,6 +1,6 @@
 import { View } from 'react-native';
 import { chemistryIds, chemistryNames, resistanceKinds } from '@/shared/contract/equipment';
-import { BoundField, BoundSelect, type TypedForm } from './bound';
+import { BoundField, BoundSelect, type TypedForm } from '../forms/bound';
 import { FieldGrid, FormPart } from './field-grid';
 import { resistanceNames, typeFieldNames as names, type TypeTexts } from './type-form';
 

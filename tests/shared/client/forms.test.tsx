@@ -10,7 +10,9 @@ import { sessionQuery } from '@/shared/client/session';
 import { text } from '@/shared/contract/common';
 import type { SessionDto } from '@/shared/contract/session';
 import { groupVolts, quantity } from '@/shared/contract/quantity';
+import { Button } from '@/shared/ui/primitives/button';
 import { Field } from '@/shared/ui/primitives/field';
+import { pressFrom } from '../../support/press';
 
 const schema = z.object({
   label: text('The label', 30),
@@ -47,7 +49,7 @@ function Form({ send }: { send: (output: Output) => Promise<unknown> }) {
       <Field label="Volts" {...useFormField(f, 'volts')} />
       <Field label="Amps" {...useFormField(f, 'amps')} />
       <Field label="Pin" {...useFormField(f, 'pin')} />
-      <button onClick={() => void f.submit()}>Send</button>
+      <Button title="Send" onPress={() => void f.submit()} />
       <p>{f.problem}</p>
       <p>{f.wrong > 0 ? wrongSentence(f.wrong) : ''}</p>
     </>
@@ -89,6 +91,24 @@ describe('a form on the contract', () => {
     fireEvent.change(field('Volts'), { target: { value: '39.6' } });
     await act(async () => {});
     expect(screen.queryByText(/39\.6/)).toBeNull();
+  });
+
+  it('takes a sentence away at the first key that answers it, and judges again on leaving', async () => {
+    open();
+    type('Volts', 'letters');
+    await screen.findByText(/no number/);
+    fireEvent.change(field('Volts'), { target: { value: 'letter' } });
+    expect(screen.queryByText(/no number/)).toBeNull();
+    type('Volts', 'letter');
+    await screen.findByText(/“letter” is no number/);
+  });
+
+  it('leaves the sentences of other fields where they are while one is typed in', async () => {
+    open();
+    type('Volts', 'letters');
+    await screen.findByText(/“letters” is no number/);
+    fireEvent.change(field('Amps'), { target: { value: '10' } });
+    expect(screen.getByText(/“letters” is no number/)).toBeTruthy();
   });
 
   it('goes to the first wrong field, says how many, and sends nothing', async () => {
@@ -134,6 +154,56 @@ describe('a form on the contract', () => {
     await press();
     await screen.findByText(/^No connection to the server/);
     expect(field('Volts').value).toBe('3.9');
+  });
+});
+
+describe.each(['mouse', 'touch'] as const)('a press (%s) straight from a field', (pointer) => {
+  const send = () => screen.getByRole('button', { name: 'Send' });
+  const put = (label: string, value: string) => fireEvent.change(field(label), { target: { value } });
+
+  it('moves nothing before the click when the field is wrong, then says so and how many', async () => {
+    const sent = vi.fn(async () => {});
+    open(sent);
+    put('Label', 'S-0402');
+    put('Volts', '39.68 V');
+    put('Amps', '0');
+    const { down, click } = await pressFrom(field('Amps'), send, pointer);
+    expect(click).toBe(down);
+    await screen.findByText('2 fields need a change.');
+    await screen.findByText(/39\.68/);
+    expect(document.activeElement).toBe(field('Volts'));
+    expect([field('Volts').value, field('Amps').value]).toEqual(['39.68 V', '0']);
+    expect(sent).not.toHaveBeenCalled();
+  });
+
+  it('sends a form whose last field was just put right, without a sentence moving the button', async () => {
+    const sent = vi.fn(async () => {});
+    open(sent);
+    put('Label', 'S-0402');
+    put('Amps', '10');
+    type('Volts', 'letters');
+    await screen.findByText(/no number/);
+    put('Volts', '3.9');
+    const { down, click } = await pressFrom(field('Volts'), send, pointer);
+    expect(click).toBe(down);
+    await waitFor(() => expect(sent).toHaveBeenCalledOnce());
+  });
+
+  it('sends again what the server refused, its sentence standing until the click', async () => {
+    const sent = vi.fn(async () => {
+      throw new ApiProblem({ status: 400, code: 'invalid', fields: { volts: 'Over this type’s 4.20 V.' } });
+    });
+    open(sent);
+    put('Label', 'S-0402');
+    put('Volts', '4.3');
+    put('Amps', '10');
+    await press();
+    await screen.findByText('Over this type’s 4.20 V.');
+    const { down, click } = await pressFrom(field('Volts'), send, pointer);
+    expect(down).toContain('Over this type');
+    expect(click).toBe(down);
+    await waitFor(() => expect(sent).toHaveBeenCalledTimes(2));
+    expect(field('Volts').value).toBe('4.3');
   });
 });
 

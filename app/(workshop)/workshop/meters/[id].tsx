@@ -13,7 +13,7 @@ import { dayOf } from '@/shared/ui/format/zone';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { BoundDay } from '@/shared/ui/workshop/bound-day';
-import { BoundField } from '@/shared/ui/workshop/bound';
+import { BoundField } from '@/shared/ui/forms/bound';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';
 import { FormScreen, Restored } from '@/shared/ui/workshop/form-screen';

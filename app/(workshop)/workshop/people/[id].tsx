@@ -19,7 +19,7 @@ import { Rule } from '@/shared/ui/primitives/rule';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { Forbidden } from '@/shared/ui/states/forbidden';
-import { BoundField } from '@/shared/ui/workshop/bound';
+import { BoundField } from '@/shared/ui/forms/bound';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';
 import { FormScreen, Restored } from '@/shared/ui/workshop/form-screen';

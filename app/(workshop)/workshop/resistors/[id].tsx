@@ -9,7 +9,7 @@ import { resistorSchema, type ResistorDto } from '@/shared/contract/equipment';
 import { useFormats } from '@/shared/ui/format/formats';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
-import { BoundField } from '@/shared/ui/workshop/bound';
+import { BoundField } from '@/shared/ui/forms/bound';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FieldGrid } from '@/shared/ui/workshop/field-grid';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';

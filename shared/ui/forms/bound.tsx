@@ -1,9 +1,10 @@
 import { useController, type FieldPath, type FieldValues, type UseFormReturn } from 'react-hook-form';
+import { fieldSentence } from '@/shared/contract/field-sentence';
 import { CheckBox } from '../primitives/check-box';
 import { Field, type FieldProps } from '../primitives/field';
 import { Select, type SelectOption } from '../primitives/select';
 
-/** A form of the settings: what is typed, as react-hook-form holds it. */
+/** A form of typed texts and choices, as react-hook-form holds it. */
 export type TypedForm<V extends FieldValues> = UseFormReturn<V, unknown, V>;
 
 interface Bound<V extends FieldValues> {
@@ -11,28 +12,15 @@ interface Bound<V extends FieldValues> {
   name: FieldPath<V>;
 }
 
-/** The schema says no more than this where nothing was chosen. */
-export const sentence = (message: string | undefined): string | undefined =>
-  message === undefined
-    ? undefined
-    : message === '' || /^Invalid (input|option)/.test(message)
-      ? 'Choose or type this.'
-      : message;
-
 /** What a control of the kit takes of the form: value, what changes it, its error, and the way to it for the focus. */
-function useBound<V extends FieldValues>({ form, name }: Bound<V>) {
+export function useBound<V extends FieldValues>({ form, name }: Bound<V>) {
   const { field, fieldState } = useController<V>({ control: form.control as never, name });
   return {
     value: field.value as unknown,
-    onChange: (value: unknown) => {
-      // A sentence that is being answered goes at the first key: were it taken away on leaving, what stands under it
-      // would jump from under the finger that presses it.
-      if (fieldState.error) form.clearErrors(name);
-      field.onChange(value);
-    },
+    onChange: field.onChange as (value: unknown) => void,
     onBlur: field.onBlur,
     ref: field.ref,
-    error: fieldState.error ? (sentence(fieldState.error.message) ?? 'Choose or type this.') : undefined,
+    error: fieldState.error ? fieldSentence(fieldState.error.message) : undefined,
   };
 }
 
@@ -40,10 +28,19 @@ function useBound<V extends FieldValues>({ form, name }: Bound<V>) {
 export function BoundField<V extends FieldValues>({
   form,
   name,
+  onLeave,
   ...look
-}: Bound<V> & Omit<FieldProps, 'value' | 'onChangeText' | 'onBlur' | 'error' | 'ref'>) {
-  const { value, onChange, ...bound } = useBound({ form, name });
-  return <Field {...look} {...bound} value={String(value ?? '')} onChangeText={onChange} />;
+}: Bound<V> &
+  Omit<FieldProps, 'value' | 'onChangeText' | 'onBlur' | 'error' | 'ref'> & {
+    /** After the check of a field that was left. */
+    onLeave?: () => void;
+  }) {
+  const { value, onChange, onBlur, ...bound } = useBound({ form, name });
+  const leave = () => {
+    onBlur();
+    onLeave?.();
+  };
+  return <Field {...look} {...bound} value={String(value ?? '')} onChangeText={onChange} onBlur={leave} />;
 }
 
 /** A choice among named values; an empty text is nothing chosen. */
