@@ -47,6 +47,7 @@ export function pastCharge(past: PastCharge, { number, repairRef }: PastNames): 
     repairRef,
     modulePosition: String(1 + (past.repair % 16)),
     spareId: pastSpareId(past),
+    neighbourSpareId: null,
     moduleTypeId: typeId(past.asked.type),
     personId: personId(past),
     createdById: personId(past),

@@ -29,6 +29,8 @@ import { Workshop } from './workshop';
 @Index('ix_charge_stage', ['workshopId', 'stage'])
 @Index('ix_charge_due', ['nextDueAt'])
 @Index('ix_charge_closed', ['workshopId', 'readyAt'])
+@Index('ix_charge_spare', ['workshopId', 'spareId'])
+@Index('ix_charge_neighbour', ['workshopId', 'neighbourSpareId'])
 @Index('uq_charge_open_spare', ['spareId'], {
   unique: true,
   where: "stage IN ('planned','queued','charging','discharging','tapering','resting','check-due','ready','held')",
@@ -57,6 +59,13 @@ export class Charge {
   @ForeignKey(() => Spare, { name: 'fk_charge_spare' })
   @Column(idColumn('spare_id'))
   spareId!: string;
+
+  /**
+   * The spare that a resistor joins to this one: its groups move too. Null on every other way. No foreign key (see its
+   * migration); spares are never deleted.
+   */
+  @Column(optionalIdColumn('neighbour_spare_id'))
+  neighbourSpareId!: string | null;
 
   @ForeignKey(() => ModuleType, { name: 'fk_charge_module_type' })
   @Column(idColumn('module_type_id'))

@@ -65,19 +65,6 @@ export const findOpenChargeOfSpare = (
   spareId: string,
 ): Promise<Charge | null> => manager.findOneBy(Charge, { workshopId, spareId, stage: In([...openStages]) });
 
-/** The last charge of a spare in which current has flowed. */
-export async function findLastStartedOfSpare(
-  manager: EntityManager,
-  workshopId: string,
-  spareId: string,
-): Promise<Pick<Charge, 'id' | 'startedAt' | 'number' | 'repairRef'> | null> {
-  return manager.findOne(Charge, {
-    where: { workshopId, spareId, startedAt: Not(IsNull()) },
-    select: { id: true, startedAt: true, number: true, repairRef: true },
-    order: { startedAt: 'DESC' },
-  });
-}
-
 export async function insertCharge(manager: EntityManager, charge: Charge): Promise<void> {
   await manager.insert(Charge, charge);
 }

@@ -120,6 +120,7 @@ function chargeRow(
     repairRef: request.repairRef,
     modulePosition: request.modulePosition,
     spareId: spare.id,
+    neighbourSpareId: option.way === 'resistor' ? planned.neighbourSpareId : null,
     moduleTypeId: type.id,
     personId: member.personId,
     createdById: member.personId,

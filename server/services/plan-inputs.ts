@@ -14,10 +14,10 @@ import type { SpareReading } from '../entities/spare-reading';
 import { conflict, invalid, notFound } from '../errors/domain-error';
 import { listUsableChannels } from '../repositories/chargers.repository';
 import { listMeters } from '../repositories/meters.repository';
-import { findLastStartedOfSpare } from '../repositories/charges.repository';
 import { findModuleType } from '../repositories/module-types.repository';
 import { listOpenHolds } from '../repositories/open-holds.repository';
 import { listResistors } from '../repositories/resistors.repository';
+import { lastMoveOf } from '../repositories/spare-moves.repository';
 import { findLastSpareReading, findSpare } from '../repositories/spares.repository';
 import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
 import { channelHolders } from './channel-availability';
@@ -47,6 +47,8 @@ export interface PlanInputs {
   input: PlanInput;
   /** What a charge keeps of it. */
   frozen: FrozenInputs;
+  /** The spare that a resistor would join to this one. */
+  neighbourSpareId: string | null;
   /** Names of the channels in the plan, and from when each is free, by id. */
   channelNames: PlanDto['channels'];
   /** Channels left out because nobody can say when they are free. */
@@ -92,6 +94,13 @@ export async function buildPlanInputs(
     now,
   );
   const spreads = meterVolts === undefined ? {} : { spreads: { meterVolts } };
+  const neighbour = await neighbourFor(
+    manager,
+    workshopId,
+    { spare, type, spareVolts: spareNow.groupVolts, targetVolts },
+    meters,
+    now,
+  );
   const frozen: FrozenInputs = {
     ...spreads,
     module: moduleParameters(type),
@@ -105,13 +114,7 @@ export async function buildPlanInputs(
     },
     channels: bench.channels,
     resistors: (await listResistors(manager, workshopId)).map(resistorParameters),
-    neighbour: await neighbourFor(
-      manager,
-      workshopId,
-      { spare, type, spareVolts: spareNow.groupVolts, targetVolts },
-      meters,
-      now,
-    ),
+    neighbour: neighbour?.state ?? null,
     workshop: workshopParameters(workshop, closesInSeconds(workshop, now, clipOnAt)),
     celsius: spareNow.celsius ?? ROOM_CELSIUS,
     seed: PLAN_SEED,
@@ -134,6 +137,7 @@ export async function buildPlanInputs(
       ...spreads,
     },
     frozen,
+    neighbourSpareId: neighbour?.spareId ?? null,
     channelNames: bench.names,
     blockedChannels: bench.blocked,
     spare,
@@ -183,11 +187,13 @@ async function plannedSpare(
   const reading = await findLastSpareReading(manager, workshopId, spare.id);
   if (!reading) throw invalid({ spareId: `${spare.label} has no reading. Read its groups first.` });
   // What a charge has brought in since is only reckoned; planned from the old reading it would be brought in twice.
-  const moved = await findLastStartedOfSpare(manager, workshopId, spare.id);
-  if (moved !== null && moved.startedAt !== null && moved.startedAt > reading.at)
+  const moved = await lastMoveOf(manager, workshopId, spare.id);
+  if (moved !== null && moved.until > reading.at) {
+    const where = moved.asNeighbour ? 'joined to another spare for' : 'on';
     throw invalid({
-      spareId: `${spare.label} has been on ${titleOf(moved)} since its last reading. Read its groups first.`,
+      spareId: `${spare.label} has been ${where} ${titleOf(moved.charge)} since its last reading. Read its groups first.`,
     });
+  }
   return { spare, type, reading };
 }
 

@@ -6,6 +6,7 @@ import type { Spare } from '../entities/spare';
 import { invalid, notFound } from '../errors/domain-error';
 import { findModuleType } from '../repositories/module-types.repository';
 import { personRefs } from '../repositories/person-refs.repository';
+import { lastMoveOf } from '../repositories/spare-moves.repository';
 import { findLastSpareReading, findSpare, openChargesBySpare } from '../repositories/spares.repository';
 import { spareDto } from './spares-dto';
 
@@ -20,6 +21,7 @@ export async function spareDtoOf(manager: EntityManager, workshopId: string, id:
   return spareDto(row, await typeOf(manager, workshopId, row.moduleTypeId), {
     reading: (await findLastSpareReading(manager, workshopId, id)) ?? undefined,
     charge: (await openChargesBySpare(manager, workshopId)).get(id),
+    move: (await lastMoveOf(manager, workshopId, id)) ?? undefined,
     people: await personRefs(manager, workshopId),
   });
 }

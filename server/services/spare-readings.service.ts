@@ -7,8 +7,10 @@ import { SpareReading } from '../entities/spare-reading';
 import { conflict, invalid, notFound } from '../errors/domain-error';
 import { findMeter } from '../repositories/meters.repository';
 import { findModuleType } from '../repositories/module-types.repository';
+import { lastMoveOf } from '../repositories/spare-moves.repository';
 import { insertSpareReading, openChargesBySpare } from '../repositories/spares.repository';
 import { announceStock } from './announce';
+import { isRunning } from './charge-stages';
 import { titleOf } from './charge-words';
 import { newId } from './ids';
 import { knownSpare, spareDtoOf } from './spare-file';
@@ -19,7 +21,7 @@ const CLOCK_SLACK_MS = 5 * 60_000;
 
 /**
  * Keeps what a spare's groups read at rest. Volts under the floor are kept too: the plan refuses them.
- * @throws DomainError 409 where the spare is fitted or does not rest, 400 with the field at fault
+ * @throws DomainError 409 where the spare is fitted or does not rest (on a charge, or joined to one by a resistor), 400 with the field at fault
  */
 export async function addSpareReading(
   deps: Deps,
@@ -38,6 +40,13 @@ export async function addSpareReading(
       throw conflict(
         'spare_on_charge',
         `${spare.label} is on ${titleOf(charge)}. Log the reading at the charge.`,
+        await spareDtoOf(manager, workshopId, spareId),
+      );
+    const joined = await lastMoveOf(manager, workshopId, spareId);
+    if (joined?.asNeighbour && (isRunning(joined.charge.stage) || joined.charge.stage === 'held'))
+      throw conflict(
+        'spare_on_charge',
+        `${spare.label} is joined to another spare for ${titleOf(joined.charge)}. Read it when the resistor is off.`,
         await spareDtoOf(manager, workshopId, spareId),
       );
     const type = await findModuleType(manager, workshopId, spare.moduleTypeId);

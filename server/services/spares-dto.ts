@@ -4,6 +4,7 @@ import type { SpareDto, SpareReadingDto, SpareWhere } from '@/shared/contract/sp
 import type { ModuleType } from '../entities/module-type';
 import type { Spare } from '../entities/spare';
 import type { SpareReading } from '../entities/spare-reading';
+import type { SpareMove } from '../repositories/spare-moves.repository';
 import type { SpareCharge } from '../repositories/spares.repository';
 import { titleOf } from './charge-words';
 import { toInstant } from './instants';
@@ -20,7 +21,11 @@ export function whereIs(spare: Spare, charge: SpareCharge | undefined): SpareWhe
   return charge ? 'charge' : 'shelf';
 }
 
-export const spareReadingDto = (reading: SpareReading, people: People): SpareReadingDto => ({
+export const spareReadingDto = (
+  reading: SpareReading,
+  people: People,
+  move: SpareMove | undefined,
+): SpareReadingDto => ({
   id: reading.id,
   at: toInstant(reading.at),
   groupVolts: reading.groupVolts,
@@ -28,14 +33,20 @@ export const spareReadingDto = (reading: SpareReading, people: People): SpareRea
   meterId: reading.meterId,
   by: personRef(people, reading.personId),
   note: reading.note,
+  movedBy: move && move.until > reading.at ? { id: move.charge.id, title: titleOf(move.charge) } : null,
 });
 
 export function spareDto(
   spare: Spare,
   type: ModuleType,
-  around: { reading: SpareReading | undefined; charge: SpareCharge | undefined; people: People },
+  around: {
+    reading: SpareReading | undefined;
+    charge: SpareCharge | undefined;
+    move: SpareMove | undefined;
+    people: People;
+  },
 ): SpareDto {
-  const { reading, charge, people } = around;
+  const { reading, charge, move, people } = around;
   const { capacityAh, source } = usedCapacity(spare, type);
   return {
     id: spare.id,
@@ -65,7 +76,7 @@ export function spareDto(
             by: personRef(people, spare.quarantinedById ?? ''),
           },
     charge: charge ? { id: charge.id, title: titleOf(charge), stage: charge.stage, rev: charge.rev } : null,
-    reading: reading ? spareReadingDto(reading, people) : null,
+    reading: reading ? spareReadingDto(reading, people, move) : null,
     rev: spare.rev,
   };
 }

@@ -6,6 +6,7 @@ import { Spare } from '../entities/spare';
 import { invalid, stale } from '../errors/domain-error';
 import { listModuleTypes } from '../repositories/module-types.repository';
 import { personRefs } from '../repositories/person-refs.repository';
+import { lastMoveOf, lastMoves } from '../repositories/spare-moves.repository';
 import {
   findLastSpareReading,
   findSpareLabelled,
@@ -34,6 +35,7 @@ export async function spares(deps: Deps, member: Member, query: SparesQuery): Pr
   const types = new Map((await listModuleTypes(manager, workshopId)).map((type) => [type.id, type]));
   const readings = await lastSpareReadings(manager, workshopId);
   const charges = await openChargesBySpare(manager, workshopId);
+  const moves = await lastMoves(manager, workshopId);
   const people = await personRefs(manager, workshopId);
   const looked = query.q?.trim().toLowerCase() ?? '';
   return (await listSpares(manager, workshopId)).flatMap((spare) => {
@@ -42,6 +44,7 @@ export async function spares(deps: Deps, member: Member, query: SparesQuery): Pr
     const dto = spareDto(spare, type, {
       reading: readings.get(spare.id),
       charge: charges.get(spare.id),
+      move: moves.get(spare.id),
       people,
     });
     if (query.where === undefined ? dto.where === 'fitted' : dto.where !== query.where) return [];
@@ -58,8 +61,10 @@ export async function spareHistory(deps: Deps, member: Member, id: string): Prom
   const { workshopId } = member;
   await knownSpare(manager, workshopId, id);
   const people = await personRefs(manager, workshopId);
+  const move = (await lastMoveOf(manager, workshopId, id)) ?? undefined;
+  const readings = await listSpareReadings(manager, workshopId, id);
   return {
-    readings: (await listSpareReadings(manager, workshopId, id)).map((reading) => spareReadingDto(reading, people)),
+    readings: readings.map((reading) => spareReadingDto(reading, people, move)),
     charges: (await listChargesOfSpare(manager, workshopId, id)).map((charge) => ({
       id: charge.id,
       title: titleOf(charge),

@@ -2,7 +2,9 @@ import type { EntityManager } from 'typeorm';
 import type { Member } from '../deps';
 import { conflict, type DomainError } from '../errors/domain-error';
 import { runningHoldsOn } from '../repositories/charge-rows.repository';
-import { chargeNames } from '../repositories/charges.repository';
+import { chargeNames, findOpenChargeOfSpare } from '../repositories/charges.repository';
+import { lastMoveOf } from '../repositories/spare-moves.repository';
+import { findSpare } from '../repositories/spares.repository';
 import { sheetBlock, type CheckSheet } from './charge-checks';
 import { loadFile, type ChargeFile } from './charge-file';
 import { stepsOfSwap } from './charge-steps';
@@ -57,5 +59,25 @@ export async function startBlock(manager: EntityManager, file: ChargeFile, sheet
   const block = sheetBlock(sheet);
   if (block) return block.text;
   const [holder] = await holdersOfStep(manager, file, 0);
-  return holder ? takenText(holder) : null;
+  return holder ? takenText(holder) : neighbourBlock(manager, file);
+}
+
+/**
+ * Sentence why the spare that a resistor joins to this one is not what it was planned with; null: it is, or none is
+ * joined.
+ */
+export async function neighbourBlock(manager: EntityManager, { charge }: ChargeFile): Promise<string | null> {
+  const { workshopId, neighbourSpareId } = charge;
+  if (neighbourSpareId === null) return null;
+  const neighbour = await findSpare(manager, workshopId, neighbourSpareId);
+  const name = neighbour?.label ?? 'The spare it is joined to';
+  const instead = 'Plan another way.';
+  if (!neighbour || neighbour.fittedAt !== null) return `${name} is no longer in stock. ${instead}`;
+  if (neighbour.quarantinedAt !== null || neighbour.condition !== 'sound') return `${name} is set aside. ${instead}`;
+  const own = await findOpenChargeOfSpare(manager, workshopId, neighbourSpareId);
+  if (own) return `${name} is on ${titleOf(own)} itself. ${instead}`;
+  const moved = await lastMoveOf(manager, workshopId, neighbourSpareId);
+  return moved && moved.until > charge.createdAt
+    ? `${name} has been moved by ${titleOf(moved.charge)} since this was planned. ${instead}`
+    : null;
 }

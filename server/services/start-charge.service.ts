@@ -1,7 +1,7 @@
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { Deps, Member } from '../deps';
 import type { RunStretch } from '../entities/run-stretch';
-import { DomainError } from '../errors/domain-error';
+import { conflict, DomainError } from '../errors/domain-error';
 import {
   answersOf,
   insertEvents,
@@ -12,6 +12,7 @@ import {
 } from '../repositories/charge-rows.repository';
 import { findCharge, updateCharge } from '../repositories/charges.repository';
 import { checkSheet, sheetBlock } from './charge-checks';
+import { chargeCard } from './charge-dto';
 import { actInstant } from './charge-instants';
 import { stageFrom, isWaitingToStart } from './charge-stages';
 import { channelNamesOf, stepsOfSwap } from './charge-steps';
@@ -19,12 +20,12 @@ import { wrongStage } from './charge-stage-conflict';
 import { ampsText, setVoltsText, clockText, listText, titleOf } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
-import { channelTaken, holdersOfStep } from './start-block';
+import { channelTaken, holdersOfStep, neighbourBlock } from './start-block';
 
 /**
  * Clips on and starts the timer.
  * @throws DomainError 422 where a check is open, answered with no or ruled out by the numbers; 409 where a channel runs
- * another charge, with who has it; 412 where somebody else was quicker
+ * another charge, with who has it, or the spare joined by a resistor is not what it was; 412 where somebody else was quicker
  */
 export function startCharge(
   deps: Deps,
@@ -40,6 +41,7 @@ export function startCharge(
     if (!isWaitingToStart(charge.stage)) throw wrongStage(write, 'Its timer runs already or is over.');
     await refuseByChecks(write);
     await refuseByChannels(write);
+    await refuseByNeighbour(write);
     const at = actInstant(file, input.at, now, { at: charge.createdAt, name: 'the plan' });
     if (charge.stage === 'planned') rebasePlan(write, at);
     charge.stage = stageFrom({ stage: 'charging' }, charge.direction);
@@ -86,6 +88,11 @@ async function refuseByChecks({ manager, file, now, member }: ChargeWrite): Prom
 async function refuseByChannels(write: ChargeWrite): Promise<void> {
   const [holder] = await holdersOfStep(write.manager, write.file, 0);
   if (holder) throw await channelTaken(write, holder);
+}
+
+async function refuseByNeighbour({ manager, file, now }: ChargeWrite): Promise<void> {
+  const block = await neighbourBlock(manager, file);
+  if (block) throw conflict('neighbour_gone', block, chargeCard(file, now));
 }
 
 /** A plan without a date says how long; its band counts from the start. A queued one has given its word for a time. */

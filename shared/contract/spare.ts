@@ -76,6 +76,8 @@ export interface SpareReadingDto {
   meterId: string | null;
   by: PersonRef;
   note: string | null;
+  /** The last charge, discharge or levelling that has moved the groups since: this is what they read before it. */
+  movedBy: { id: string; title: string } | null;
 }
 
 export interface SpareDto extends SpareInput {

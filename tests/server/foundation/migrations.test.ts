@@ -27,7 +27,7 @@ describe('migrations', () => {
 
   it('go down to an empty database and up again', async () => {
     const dataSource = await open(':memory:');
-    await dataSource.undoLastMigration();
+    for (const _one of dataSource.migrations) await dataSource.undoLastMigration();
     const left = (await dataSource.query(
       "SELECT name FROM sqlite_master WHERE type = 'table' AND name NOT LIKE 'sqlite_%'",
     )) as { name: string }[];

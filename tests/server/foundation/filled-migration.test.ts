@@ -1,0 +1,54 @@
+import { afterAll, beforeAll, expect, test } from 'vitest';
+import type { DataSource } from 'typeorm';
+import { kept, makeBench, minute, running, type Bench } from '../charges/bench';
+
+let bench: Bench;
+let dataSource: DataSource;
+beforeAll(async () => {
+  bench = await makeBench();
+  dataSource = bench.server.deps.dataSource;
+  const charge = await running(bench, { spareId: await bench.spare('S-0001'), repairRef: 'R-1' });
+  bench.server.clock.advance(5 * minute);
+  await bench
+    .as('technician')
+    .post(`/api/charges/${charge.id}/readings`, { amps: '10' })
+    .set('Idempotency-Key', 'a-reading-to-keep');
+  await bench.spare('S-0002');
+  const joined = await kept(bench, { spareId: await bench.spare('S-0003'), repairRef: 'R-2' }, { channel: 'B1' });
+  // A charge through a resistor as the version before wrote it: only the frozen plan names its neighbour.
+  await dataSource.query(
+    `UPDATE charge SET way = 'resistor', frozen = json_set(frozen, '$.neighbour', json('{"label":"S-0002"}')) WHERE id = ?`,
+    [joined.id],
+  );
+});
+afterAll(() => bench.server.close());
+
+/** Every row of every table but the column that comes and goes. */
+async function everything(): Promise<Record<string, unknown[]>> {
+  const rows: Record<string, unknown[]> = {};
+  for (const { tableName } of dataSource.entityMetadatas) {
+    const found = (await dataSource.query(`SELECT * FROM ${tableName} ORDER BY id`)) as Record<string, unknown>[];
+    rows[tableName] = found.map(({ neighbour_spare_id: _gone, ...row }) => row);
+  }
+  return rows;
+}
+
+test('the last migration goes down and up over a filled database without losing a row, and finds the neighbours', async () => {
+  const before = await everything();
+  expect(before.charge).toHaveLength(2);
+  expect(before.charge_event!.length).toBeGreaterThan(3);
+  await dataSource.undoLastMigration();
+  expect(await everything()).toEqual(before);
+  await dataSource.runMigrations();
+  expect(await everything()).toEqual(before);
+  expect((await dataSource.driver.createSchemaBuilder().log()).upQueries).toEqual([]);
+  expect(await dataSource.query('PRAGMA foreign_key_check')).toEqual([]);
+  expect(await dataSource.query('PRAGMA foreign_keys')).toEqual([{ foreign_keys: 1 }]);
+  const found = (await dataSource.query(
+    'SELECT c.repair_ref, s.label FROM charge c LEFT JOIN spare s ON s.id = c.neighbour_spare_id ORDER BY c.repair_ref',
+  )) as unknown[];
+  expect(found).toEqual([
+    { repair_ref: 'R-1', label: null },
+    { repair_ref: 'R-2', label: 'S-0002' },
+  ]);
+});
