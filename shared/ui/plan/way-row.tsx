@@ -12,6 +12,9 @@ import { ribbonTwin } from '../wait-ribbon/twin';
 import { WaitRibbon } from '../wait-ribbon/wait-ribbon';
 import { finishNames, optionTitle, wayNames } from './way-words';
 
+/** Letters that a way's name and its channel may have together on the first line of a phone. */
+const firstLineLetters = 40;
+
 /** What stands at the right of a way: it is too late, the soonest, or the soonest that leaves the busbars alone. */
 function markWords(option: PlanOption, readyBy: string | null): { text: string; bad: boolean } | null {
   if (!option.withinTolerance) return { text: 'ends outside the tolerance', bad: true };
@@ -57,8 +60,8 @@ export function WayRow({
   const styles = useStyles();
   const { marks } = useFormats();
   const mark = markWords(option, readyBy);
-  // A charge over several channels has too long a name for the first line of a phone.
-  const below = wide || option.channelText.length > 10;
+  // The first line of a phone bears so many letters; a longer one has its channel below.
+  const below = wide || optionTitle(option).length + option.channelText.length > firstLineLetters;
   const needs = [
     ...(below ? [option.channelText.replace(' · ', ', ')] : []),
     option.busbarsOff ? 'busbars off' : 'busbars stay',
@@ -88,7 +91,9 @@ export function WayRow({
   const head = (
     <View style={styles.head}>
       <RadioMark on={chosen} />
-      <Txt bold>{wayNames[option.way]}</Txt>
+      <Txt bold nowrap>
+        {wayNames[option.way]}
+      </Txt>
       {option.way === 'resistor' ? null : (
         <Txt tone="ink2" style={styles.finish} numberOfLines={1}>
           {finishNames[option.finish]}
