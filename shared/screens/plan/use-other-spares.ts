@@ -3,7 +3,7 @@ import type { PlanRequest } from '@/shared/contract/plan';
 import type { SpareDto } from '@/shared/contract/spare';
 import { useFormats } from '@/shared/ui/format/formats';
 import { bestOption } from '@/shared/ui/plan/best-option';
-import { ruledOutWords } from '@/shared/ui/spare/spare-words';
+import { readBeforeWords, ruledOutWords } from '@/shared/ui/spare/spare-words';
 
 /** Other spares that are reckoned where this one is refused. */
 const mostOthers = 3;
@@ -23,7 +23,8 @@ export function useOtherSpares(
               other.id !== spare.id &&
               other.moduleTypeId === spare.moduleTypeId &&
               other.where === 'shelf' &&
-              ruledOutWords(other, marks) === null,
+              ruledOutWords(other, marks) === null &&
+              readBeforeWords(other) === null,
           )
           .slice(0, mostOthers)
       : [];

@@ -4,6 +4,7 @@ import type { MeterDto } from '@/shared/contract/equipment';
 import type { SpareDto } from '@/shared/contract/spare';
 import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
+import { readBeforeWords } from '../spare/spare-words';
 import { DateTimeField } from '../primitives/date-time-field';
 import { Field } from '../primitives/field';
 import { Link } from '../primitives/link';
@@ -35,7 +36,12 @@ export function PlanFields({
   const styles = useStyles();
   const { marks } = useFormats();
   const spareWords = (spare: SpareDto) => {
-    const lowest = spare.reading ? `, ${volts(Math.min(...spare.reading.groupVolts), marks)}` : '';
+    const lowest =
+      readBeforeWords(spare) !== null
+        ? ', to be read again'
+        : spare.reading
+          ? `, ${volts(Math.min(...spare.reading.groupVolts), marks)}`
+          : '';
     const where =
       spare.where === 'shelf'
         ? spare.shelfPlace

@@ -8,7 +8,7 @@ import { LevelColumn } from '../level-column/level-column';
 import { FactList } from '../primitives/fact-list';
 import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { apartVolts, isCapacityGuessed, sourceWords } from '../spare/spare-words';
+import { apartVolts, isCapacityGuessed, readBeforeWords, sourceWords } from '../spare/spare-words';
 
 /** From spare to pack: the groups as they are reckoned to rest now, the target across them, what has to be brought in. */
 export function PlanSummary({
@@ -77,7 +77,14 @@ export function PlanSummary({
             value: ampHours(spare.usedCapacityAh, marks),
             note: isCapacityGuessed(spare) ? 'guessed' : sourceWords[spare.capacitySource],
           },
-          ...(spare.reading ? [{ name: 'Read', value: age(Date.parse(spare.reading.at), zone, now) }] : []),
+          ...(spare.reading
+            ? [
+                {
+                  name: 'Read',
+                  value: readBeforeWords(spare) ? 'to be read again' : age(Date.parse(spare.reading.at), zone, now),
+                },
+              ]
+            : []),
         ]
       : []),
   ];

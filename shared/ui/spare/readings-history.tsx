@@ -48,12 +48,18 @@ export function ReadingsHistory({
         </FullWidth>
       ) : null}
       <View role="list" aria-label="Readings" style={styles.list}>
-        {readings.map((reading) => (
+        {readings.map((reading, place) => (
           <View role="listitem" key={reading.id} style={styles.row}>
             <View style={styles.words}>
               <Txt numberOfLines={1}>{day(Date.parse(reading.at))}</Txt>
               <Txt kind="small" tone="ink2" numberOfLines={2}>
-                {[reading.by.name.split(' ')[0], reading.note, reading.meterId && meterName(reading.meterId)]
+                {[
+                  reading.by.name.split(' ')[0],
+                  reading.note,
+                  reading.meterId && meterName(reading.meterId),
+                  // Of the older ones a later reading tells what became of them.
+                  place === 0 && reading.movedBy && `before ${reading.movedBy.title}`,
+                ]
                   .filter(Boolean)
                   .join(', ')}
               </Txt>

@@ -9,7 +9,7 @@ import { Num } from '../primitives/num';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { presentVolts, readAt, type StockItem } from './spare-model';
-import { apartVolts, OLD_READING_DAYS } from './spare-words';
+import { apartVolts, OLD_READING_DAYS, readBeforeWords } from './spare-words';
 
 /** The groups as vessels, and beside them the lowest, how far apart they are, and how old that is. */
 export function SpareHead({ item, now }: { item: StockItem; now: number }) {
@@ -23,6 +23,7 @@ export function SpareHead({ item, now }: { item: StockItem; now: number }) {
   const days = at === null ? 0 : (now - at) / 86_400_000;
   const deep = lowest !== null && lowest < spare.floorVolts;
   const ageText = at === null ? null : age(at, zone, now);
+  const before = readBeforeWords(spare);
   const mark = card
     ? `Mark: ${volts(card.targetVolts, marks)}, target of ${card.title}`
     : spare.shelfVolts !== null
@@ -79,7 +80,14 @@ export function SpareHead({ item, now }: { item: StockItem; now: number }) {
           {`${millivolts(apartVolts(groups))} apart${!under && spare.reading?.celsius != null ? `, at ${celsius(spare.reading.celsius)}` : ''}`}
         </Txt>
         {deep ? <Txt kind="small" tone="ink2">{`Floor, dashed: ${clipVolts(spare.floorVolts, marks)}`}</Txt> : null}
-        {ageText ? (
+        {before !== null ? (
+          <Txt kind="small" style={styles.age}>
+            <Txt kind="small" bold>
+              {`${before}.`}
+            </Txt>
+            {' Its groups have moved since: read it again before it is planned.'}
+          </Txt>
+        ) : ageText ? (
           <Txt kind="small" style={styles.age}>
             <Txt kind="small" bold>
               {ageText === 'today' ? 'Read today.' : ageText === 'yesterday' ? 'Read yesterday.' : `${ageText} old.`}

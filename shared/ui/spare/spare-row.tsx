@@ -8,7 +8,7 @@ import { StageGlyph } from '../stage/stage-glyph';
 import { makeStyles } from '../theme/make-styles';
 import { SpareColumn } from './spare-column';
 import { presentVolts, readAt, stockMark, whereWords, type StockItem } from './spare-model';
-import { apartVolts, capacityWords, ruledOutWords } from './spare-words';
+import { apartVolts, capacityWords, readBeforeWords, ruledOutWords } from './spare-words';
 
 /** One spare on the phone: columns, label, where it is, capacity with its source; lowest volts and their age. */
 export function SpareRow({ item, now, onOpen }: { item: StockItem; now: number; onOpen: () => void }) {
@@ -21,10 +21,14 @@ export function SpareRow({ item, now, onOpen }: { item: StockItem; now: number; 
   const at = readAt(item);
   const under = lowest !== null && lowest < spare.floorVolts;
   const out = ruledOutWords(spare, marks);
+  const before = readBeforeWords(spare);
   const where = whereWords(item);
-  const detail = out ?? `${capacityWords(spare, marks)}, ${millivolts(apartVolts(groups))} apart`;
+  const detail = [
+    out ?? `${capacityWords(spare, marks)}, ${millivolts(apartVolts(groups))} apart`,
+    ...(before === null ? [] : [before.replace(/^R/, 'r')]),
+  ].join(', ');
   const lowestWords = lowest === null ? 'not read' : under ? clipVolts(lowest, marks) : volts(lowest, marks);
-  const ageWords = at === null ? '' : age(at, zone, now);
+  const ageWords = before !== null ? 'read again' : at === null ? '' : age(at, zone, now);
   return (
     <PressableLink
       href={`/spares/${spare.id}`}
@@ -50,7 +54,12 @@ export function SpareRow({ item, now, onOpen }: { item: StockItem; now: number; 
         </Txt>
       </View>
       <View style={styles.volts}>
-        <Txt kind="numS" nowrap align="right" tone={lowest === null ? 'ink2' : under ? 'alarm' : 'ink'}>
+        <Txt
+          kind="numS"
+          nowrap
+          align="right"
+          tone={lowest === null ? 'ink2' : under ? 'alarm' : before !== null ? 'ink3' : 'ink'}
+        >
           {lowestWords}
         </Txt>
         <Txt kind="small" tone="ink2" nowrap align="right">

@@ -5,7 +5,7 @@ import { Txt } from '../primitives/txt';
 import { StageGlyph } from '../stage/stage-glyph';
 import { makeStyles } from '../theme/make-styles';
 import type { StockItem } from './spare-model';
-import { OLD_READING_DAYS, ruledOutWords } from './spare-words';
+import { OLD_READING_DAYS, readBeforeWords, ruledOutWords } from './spare-words';
 
 /** Beside the table: what no plan takes and why, and how many readings are old. */
 export function SpareSide({
@@ -23,9 +23,11 @@ export function SpareSide({
     const why = ruledOutWords(spare, marks);
     return why === null ? [] : [{ spare, why }];
   });
+  const moved = items.filter(({ spare }) => spare.where !== 'fitted' && readBeforeWords(spare) !== null);
   const old = items.filter(
     ({ spare }) =>
       spare.where === 'shelf' &&
+      readBeforeWords(spare) === null &&
       spare.reading !== null &&
       now - Date.parse(spare.reading.at) > OLD_READING_DAYS * 86_400_000,
   ).length;
@@ -64,6 +66,16 @@ export function SpareSide({
           ))
         )}
       </View>
+      {moved.length > 0 ? (
+        <View style={{ rowGap: 4 }}>
+          <Txt kind="heading" heading={2}>
+            To be read again
+          </Txt>
+          <Txt kind="small" tone="ink2">
+            {`${moved.map(({ spare }) => spare.label).join(', ')}: moved by a charge since the last reading. No plan takes ${moved.length === 1 ? 'it' : 'them'} before.`}
+          </Txt>
+        </View>
+      ) : null}
       {old > 0 ? (
         <View style={{ rowGap: 4 }}>
           <Txt kind="heading" heading={2}>

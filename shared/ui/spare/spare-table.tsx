@@ -9,7 +9,7 @@ import { stages } from '../stage/stages';
 import { CapacityMark, capacityAxis } from './capacity-mark';
 import { SpareColumn } from './spare-column';
 import { presentVolts, readAt, stockMark, whereWords, type StockItem } from './spare-model';
-import { apartVolts, capacityBandOf, isCapacityGuessed, sourceWords } from './spare-words';
+import { apartVolts, capacityBandOf, isCapacityGuessed, readBeforeWords, sourceWords } from './spare-words';
 
 const list = { h: 36, w: 12, gap: 4 };
 const slim = { h: 36, w: 6, gap: 3 };
@@ -130,7 +130,7 @@ export function SpareTable({
           width: 52,
           cell: (item) => {
             const at = readAt(item);
-            return at === null ? '–' : ageShort(at, zone, now);
+            return at === null ? '–' : readBeforeWords(item.spare) !== null ? 'again' : ageShort(at, zone, now);
           },
         },
         {
@@ -142,7 +142,7 @@ export function SpareTable({
             if (mark === null)
               return (
                 <Txt kind="small" tone="ink2" style={{ marginLeft: 29 }}>
-                  {item.spare.where === 'fitted' ? 'fitted' : 'on the shelf'}
+                  {item.spare.where === 'fitted' ? 'fitted' : (readBeforeWords(item.spare) ?? 'on the shelf')}
                 </Txt>
               );
             return (

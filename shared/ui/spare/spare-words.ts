@@ -53,6 +53,17 @@ export function ruledOutWords(spare: SpareDto, marks = pointMarks): string | nul
   return null;
 }
 
+/**
+ * 'Read before R-2418': its groups have been moved since, and no plan takes it before it is read again. Null where the
+ * reading stands, and while its own charge is under way, whose figures are shown instead.
+ */
+export function readBeforeWords(spare: Pick<SpareDto, 'reading' | 'where' | 'charge'>): string | null {
+  const movedBy = spare.reading?.movedBy;
+  if (!movedBy) return null;
+  const waits = spare.charge?.stage === 'planned' || spare.charge?.stage === 'queued';
+  return spare.where === 'charge' && !waits ? null : `Read before ${movedBy.title}`;
+}
+
 /** Searched as the server searches: label, type, shelf place. */
 export function matches(spare: Pick<SpareDto, 'label' | 'typeName' | 'shelfPlace'>, typed: string): boolean {
   const looked = typed.trim().toLowerCase();

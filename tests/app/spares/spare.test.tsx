@@ -2,6 +2,9 @@ import { fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { afterEach, beforeEach, expect, it, vi } from 'vitest';
 import Spare from '@/app/(workshop)/spares/[id]/index';
 import type { SpareDto } from '@/shared/contract/spare';
+import { PlanFields } from '@/shared/ui/plan/plan-fields';
+import { emptyPlan } from '@/shared/ui/plan/plan-typed';
+import { SpareRow } from '@/shared/ui/spare/spare-row';
 import { draw, emptyDevice, press } from '../charges/bench-of';
 import { fakeServer, problem } from '../workshop/server';
 
@@ -39,6 +42,7 @@ const spare: SpareDto = {
     meterId: null,
     by: { id: 'p1', name: 'Petra Aldwin' },
     note: null,
+    movedBy: null,
   },
   rev: 5,
 };
@@ -103,4 +107,54 @@ it('says who was quicker, keeps what was chosen, and sends it over the present s
     fireEvent.click(sheet.getByRole('button', { name: 'Put in quarantine' }));
     expect(server.writes().at(-1)!.body).toMatchObject({ reason: 'Dented', charge: { id: 'c1', rev: 4 } });
   });
+});
+
+const moved: SpareDto = {
+  ...spare,
+  where: 'shelf',
+  charge: null,
+  reading: { ...spare.reading!, movedBy: { id: 'c7', title: 'R-2406' } },
+};
+const now = Date.parse('2026-06-09T12:00:00.000Z');
+
+it('says on its page that a reading is of before a charge, and offers no plan before it is read again', async () => {
+  stockOf(moved);
+  const { unmount } = draw(<Spare />);
+  expect(await screen.findByText('Read before R-2406.')).toBeTruthy();
+  expect(screen.queryByText('Plan a charge with S-0408')).toBeNull();
+  await press('Enter a reading');
+  unmount();
+  emptyDevice();
+  stockOf({ ...moved, reading: spare.reading });
+  draw(<Spare />);
+  expect(await screen.findByText('Plan a charge with S-0408')).toBeTruthy();
+  expect(screen.queryByText('Read before R-2406.')).toBeNull();
+});
+
+it('says so in the list and where a plan chooses its spare', async () => {
+  stockOf(moved);
+  draw(
+    <>
+      <SpareRow item={{ spare: moved, card: null }} now={now} onOpen={() => {}} />
+      <PlanFields
+        typed={{ ...emptyPlan, spareId: 's1' }}
+        errors={{}}
+        spares={[moved]}
+        meters={[]}
+        today="2026-06-09"
+        toleranceHint="5"
+        onChange={() => {}}
+        onLeave={() => {}}
+      />
+    </>,
+  );
+  expect(screen.getByRole('link', { name: /S-0408.*read before R-2406.*read again/ })).toBeTruthy();
+  expect((await screen.findAllByText(/S-0408 · 2-series 66 Ah, to be read again/)).length).toBeGreaterThan(0);
+});
+
+it('shows the figures of its own charge while that is under way, whatever was read before', async () => {
+  stockOf({ ...moved, where: 'charge', charge: { id: 'c7', title: 'R-2406', stage: 'charging', rev: 9 } });
+  draw(<Spare />);
+  await press('Open the charge');
+  expect(screen.queryByText('Read before R-2406.')).toBeNull();
 });

@@ -28,7 +28,7 @@ import { blockedBecause, SpareFoot, type SpareAct } from '@/shared/ui/spare/spar
 import { SpareHead } from '@/shared/ui/spare/spare-head';
 import { stockItems, whereWords } from '@/shared/ui/spare/spare-model';
 import { SpareStanding } from '@/shared/ui/spare/spare-standing';
-import { ruledOutWords } from '@/shared/ui/spare/spare-words';
+import { readBeforeWords, ruledOutWords } from '@/shared/ui/spare/spare-words';
 import { ErrorState } from '@/shared/ui/states/error-state';
 import { Loading } from '@/shared/ui/states/loading';
 
@@ -84,7 +84,7 @@ function Page({ spare, onBack, onStale }: { spare: SpareDto; onBack: () => void;
   };
   const ratedAh = types.data?.find((type) => type.id === spare.moduleTypeId)?.ratedAh ?? null;
   const people = gate.people.length > 0 ? ` (${gate.people.join(', ')})` : '';
-  const canPlan = spare.where === 'shelf' && ruledOutWords(spare, marks) === null;
+  const canPlan = spare.where === 'shelf' && ruledOutWords(spare, marks) === null && readBeforeWords(spare) === null;
   return (
     <Screen
       header={
