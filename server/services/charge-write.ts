@@ -77,7 +77,8 @@ export async function changeCharge(
     try {
       await act(write);
     } catch (error) {
-      throw isWrongStage(error) ? toldBy(error, await last()) : error;
+      // Who names a revision has seen the stage; who names none hears who brought it there.
+      throw rev === null && isWrongStage(error) ? toldBy(error, await last()) : error;
     }
     file.charge.rev += 1;
     const done = await settle(manager, file, now, notes);
