@@ -1,6 +1,6 @@
 /** Group voltages against the type they belong to: one set of sentences for the form and the API. */
 import * as z from 'zod/mini';
-import { quantity } from './quantity';
+import { quantity, readQuantity } from './quantity';
 
 export interface TypeWindow {
   groupsInSeries: number;
@@ -40,6 +40,29 @@ export function groupVoltsProblem(volts: number, type: TypeWindow): string | nul
     return `${over} That looks like the whole module. Type each group.`;
   if (inside(volts / 10) || inside(volts / 100)) return `${over} A point in the wrong place?`;
   return `${over} Read it again, or check the type.`;
+}
+
+/**
+ * The sentence where this cannot be the target of a type, as a person types it; null: it can. A number that is no
+ * voltage at all is left to the schema.
+ * @param offsetVolts known offset of the meter it was read with, V: taken off before it is judged, as in the plan
+ */
+export function targetProblem(raw: unknown, type: TypeWindow, offsetVolts = 0): string | null {
+  const reading = readQuantity(raw, { name: 'The voltage', unit: 'V', min: 0, max: MOST_TYPED_VOLTS });
+  if (!reading.ok) return null;
+  const { value } = reading;
+  const { chargeLimitVolts: most, dischargeLimitVolts: least } = type;
+  // To the microvolt: 4.202 − 0.002 is no more than 4.2.
+  const volts = Math.round((value - offsetVolts) * 1e6) / 1e6;
+  const each = value / type.groupsInSeries;
+  if (volts > most && type.groupsInSeries > 1 && each >= least && each <= most)
+    return `${value}${unit} is over this type's ${limit(most)}. That looks like the whole module: ${each.toFixed(3)}${unit} a group.`;
+  if (volts > most && value <= most)
+    return `${value}${unit} is ${volts.toFixed(3)}${unit} without the meter's offset, over this type's ${limit(most)}.`;
+  if (volts > most)
+    return groupVoltsProblem(value, type) ?? `${value}${unit} is over this type's ${limit(most)}. Type that or less.`;
+  if (volts < least) return `${value}${unit} is under this type's ${limit(least)}. Type that or more.`;
+  return null;
 }
 
 /**

@@ -2,6 +2,7 @@ import { useState } from 'react';
 import { isProblem } from '@/shared/client/api-problem';
 import { useNow } from '@/shared/client/clock';
 import { useDraft } from '@/shared/client/drafts';
+import { useMeters } from '@/shared/client/meters';
 import { usePlan } from '@/shared/client/plans';
 import { useSettled } from '@/shared/client/settled';
 import { useSpares } from '@/shared/client/spares';
@@ -29,7 +30,11 @@ export function usePlanPage() {
   const [left, setLeft] = useState<Partial<Record<PlanField, true>>>({});
   const [tried, setTried] = useState(false);
   const [picked, setPicked] = useState<string | null>(null);
-  const { request, errors } = requestOf(typed, { zone, today, now });
+  const spare = spares.data?.find((other) => other.id === typed.spareId) ?? null;
+  const meters = useMeters().data;
+  const offsetMillivolts = meters?.find((meter) => meter.id === typed.meterId)?.offsetMillivolts ?? 0;
+  const limits = spare === null ? null : { type: spare, offsetMillivolts };
+  const { request, errors } = requestOf(typed, { zone, today, now, limits });
   // What came whole with the address or the draft is told in a few lines; anything else is still to be typed.
   const [open, setOpen] = useState(request === null);
   const settled = useSettled<PlanRequest | null>(request, settleMs);
@@ -39,7 +44,6 @@ export function usePlanPage() {
   const refused = dto !== null && dto.plan.refusals.length > 0;
   const chosen =
     dto === null || refused ? null : (dto.plan.options.find((option) => option.id === picked) ?? bestOption(dto.plan));
-  const spare = spares.data?.find((other) => other.id === typed.spareId) ?? null;
   const others = useOtherSpares(spare, refused && dto.plan.refusals.some(isOfTheModule) ? settled : null, spares.data);
 
   const shown = Object.fromEntries(

@@ -1,4 +1,5 @@
 /** What is typed into a plan, and the request it makes. Pure. */
+import { targetProblem, type TypeWindow } from '@/shared/contract/group-volts';
 import type { PlanRequest } from '@/shared/contract/plan';
 import { planSchema } from '@/shared/contract/plan';
 import { parseTimeOfDay } from '../format/parse';
@@ -49,10 +50,20 @@ function typedInstant(day: string, time: string, today: string, zone: string): s
   return new Date(instantOfDay(day || today, minutes, zone)).toISOString();
 }
 
-/** The request that was typed, and the sentence at each field that keeps it from being one. */
+/** What is known of the chosen spare and meter: the target is judged by them, as the plan will. */
+export interface TargetLimits {
+  type: TypeWindow;
+  /** Known offset of the meter the pack was read with, mV. */
+  offsetMillivolts: number;
+}
+
+/**
+ * The request that was typed, and the sentence at each field that keeps it from being one.
+ * @param limits null while the spare is not chosen or not known yet
+ */
 export function requestOf(
   typed: PlanTyped,
-  { zone, today, now }: { zone: string; today: string; now: number },
+  { zone, today, now, limits = null }: { zone: string; today: string; now: number; limits?: TargetLimits | null },
 ): { request: PlanRequest | null; errors: Partial<Record<PlanField, string>> } {
   const errors: Partial<Record<PlanField, string>> = {};
   const readyBy = typedInstant(typed.readyDay, typed.readyTime, today, zone);
@@ -62,6 +73,8 @@ export function requestOf(
   if (readyBy && Date.parse(readyBy) < now - 60_000) errors.readyTime = 'That time is over. Choose a later one.';
   if (clipOnAt && Date.parse(clipOnAt) < now - 15 * 60_000) errors.clipTime = 'That time is over. Choose a later one.';
   if (typed.spareId === '') errors.spareId = 'Choose the spare.';
+  const target = limits && targetProblem(typed.targetVolts, limits.type, limits.offsetMillivolts / 1000);
+  if (target) errors.targetVolts = target;
   const parsed = planSchema.safeParse({
     spareId: typed.spareId,
     targetVolts: typed.targetVolts,

@@ -24,6 +24,36 @@ describe('what is typed into a plan', () => {
     expect(errors.targetVolts).toMatch(sentence);
   });
 
+  describe('once the spare is chosen', () => {
+    const type = { groupsInSeries: 2, chargeLimitVolts: 4.2, dischargeLimitVolts: 3 };
+    const told = (targetVolts: string, offsetMillivolts = 0) => {
+      const { request, errors } = requestOf({ ...typed, targetVolts }, { ...at, limits: { type, offsetMillivolts } });
+      expect(request === null).toBe(errors.targetVolts !== undefined);
+      return errors.targetVolts?.replaceAll('\u00a0', ' ') ?? null;
+    };
+
+    it.each([
+      ['39.68', "39.68 V is over this type's 4.20 V. A point in the wrong place?"],
+      ['3968', "3968 V is over this type's 4.20 V. In millivolts? Then it is 3.968 V."],
+      ['7.936 V', "7.936 V is over this type's 4.20 V. That looks like the whole module: 3.968 V a group."],
+      ['4,21', "4.21 V is over this type's 4.20 V. Type that or less."],
+      ['2.41', "2.41 V is under this type's 3.00 V. Type that or more."],
+    ])('judges “%s” by the limits of its type', (targetVolts, sentence) => {
+      expect(told(targetVolts)).toBe(sentence);
+    });
+
+    it('takes a target on either limit, and leaves what is no number to its own sentence', () => {
+      expect([told('4.2'), told('3')]).toEqual([null, null]);
+      expect(told('abc')).toBe('“abc” is no number. Type it like 3.968.');
+      expect(told('')).toMatch(/missing/);
+    });
+
+    it('takes the known offset of the meter off first, as the plan does: 4.202 V on one that reads 2 mV too much', () => {
+      expect(told('4.202', 2)).toBeNull();
+      expect(told('4.2', -2)).toBe("4.2 V is 4.202 V without the meter's offset, over this type's 4.20 V.");
+    });
+  });
+
   it('refuses a time that is over, at the field it was typed into', () => {
     const { request, errors } = requestOf({ ...typed, readyDay: '2026-06-09', readyTime: '09:00' }, at);
     expect(request).toBeNull();
