@@ -1,0 +1,123 @@
+import { fireEvent, screen, waitFor } from '@testing-library/react';
+import { router } from 'expo-router';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import Plan from '@/app/(workshop)/plan';
+import { planCharge } from '@/calc';
+import type { PlanDto } from '@/shared/contract/plan';
+import type { SpareDto } from '@/shared/contract/spare';
+import { channel, planInput } from '../../calc/plan-fixtures';
+import { pressFrom } from '../../support/press';
+import { draw, emptyDevice, input, meters, press, problem } from '../charges/bench-of';
+import { fakeServer } from '../workshop/server';
+
+vi.mock('expo-router', async (original) => ({
+  ...(await original<object>()),
+  useLocalSearchParams: () => ({ spare: 's1' }),
+}));
+
+const spare = {
+  id: 's1',
+  label: 'S-0398',
+  moduleTypeId: 't1',
+  typeName: '2-series 66 Ah',
+  shelfPlace: 'B2',
+  groupsInSeries: 2,
+  chargeLimitVolts: 4.2,
+  dischargeLimitVolts: 2.7,
+  floorVolts: 2.5,
+  shelfVolts: null,
+  where: 'shelf',
+  condition: 'sound',
+  capacitySource: 'measured',
+  capacityAh: 66,
+  healthPercent: null,
+  usedCapacityAh: 66,
+  capacitySdAh: 2,
+  quarantine: null,
+  charge: null,
+  reading: null,
+  note: null,
+  rev: 1,
+} satisfies SpareDto;
+
+const planned: PlanDto = {
+  plan: planCharge(planInput({ channels: [channel('A1')] })),
+  plannedAt: new Date().toISOString(),
+  clipOnAt: new Date().toISOString(),
+  toleranceMillivolts: 5,
+  channels: { 'id-A1': { name: 'A1', chargerName: 'Supply A', freeAt: null } },
+};
+
+let server: ReturnType<typeof fakeServer>;
+beforeEach(() => {
+  emptyDevice();
+  vi.mocked(router.replace).mockClear();
+  server = fakeServer('technician');
+  Object.assign(server.answers, {
+    'GET /api/spares': () => Response.json([spare]),
+    'GET /api/meters': () => Response.json(meters),
+    'GET /api/workshop': () => Response.json({ id: 'w1', toleranceMillivolts: 5 }),
+    'POST /api/plans': () => Response.json(planned),
+  });
+  draw(<Plan />);
+});
+afterEach(() => vi.unstubAllGlobals());
+
+const type = async (label: string, text: string) => fireEvent.change(await input(label), { target: { value: text } });
+const checks = () => screen.getByRole('button', { name: 'Checks before clipping on' });
+const overLimit = /^39\.68\s?V is over this type.s 4\.20\s?V/;
+/** A disabled button stays in the tab order and says so by itself. */
+const reckoned = () =>
+  waitFor(() => {
+    expect(server.writes().some(({ path }) => path === '/api/plans')).toBe(true);
+    expect(checks().getAttribute('aria-disabled')).toBeNull();
+  });
+const kept = () => server.writes().filter(({ path }) => path === '/api/charges');
+
+describe('planning a charge', () => {
+  it('pressed straight from a wrong voltage moves nothing before the click, then says what is wrong and how many', async () => {
+    await type('Pack rests at', '39.68');
+    const { down, click } = await pressFrom(await input('Pack rests at'), checks);
+    expect(click).toBe(down);
+    expect(await screen.findByText(overLimit)).toBeTruthy();
+    expect(screen.getByText('One field needs a change.')).toBeTruthy();
+    expect((await input('Pack rests at')).value).toBe('39.68');
+    expect(kept()).toEqual([]);
+  });
+
+  it('says nothing of a field that is still typed in, and says it once the field is left', async () => {
+    await type('Pack rests at', '39.68');
+    expect(screen.queryByText(/is over/)).toBeNull();
+    fireEvent.blur(await input('Pack rests at'));
+    expect(await screen.findByText(overLimit)).toBeTruthy();
+  });
+
+  it('reckons what was typed and keeps the soonest way for its checks', async () => {
+    server.answers['POST /api/charges'] = () => Response.json({ id: 'c7', number: 'B-0007', rev: 1 });
+    await type('Pack rests at', '3,92 V');
+    await type('Repair', 'R-2418');
+    const soonest = planned.plan.options.find((option) => option.soonest)!;
+    await reckoned();
+    fireEvent.click(checks());
+    await waitFor(() => expect(router.replace).toHaveBeenCalledWith('/charges/c7/checks'));
+    expect(kept()[0]!.body).toMatchObject({
+      spareId: 's1',
+      targetVolts: 3.92,
+      repairRef: 'R-2418',
+      optionId: soonest.id,
+    });
+  });
+
+  it('keeps everything typed where the spare was taken meanwhile, and leads to the charge that has it', async () => {
+    server.answers['POST /api/charges'] = () =>
+      problem(409, 'S-0398 is on a charge already.', { present: { chargeId: 'c3', title: 'R-2411' } });
+    await type('Pack rests at', '3.92');
+    await reckoned();
+    fireEvent.click(checks());
+    expect(await screen.findByText(/^S-0398 is on a charge already/)).toBeTruthy();
+    fireEvent.click(await screen.findByText('Open the charge R-2411'));
+    expect(router.push).toHaveBeenCalledWith('/charges/c3');
+    expect((await input('Pack rests at')).value).toBe('3.92');
+    expect(await press('Checks before clipping on')).toBeTruthy();
+  });
+});

@@ -1,0 +1,117 @@
+import { fireEvent, screen, waitFor, within } from '@testing-library/react';
+import { router } from 'expo-router';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import Workshop from '@/app/(workshop)/workshop/index';
+import { roles, type Role } from '@/shared/contract/roles';
+import { pressFrom } from '../../support/press';
+import { draw, emptyDevice } from '../charges/bench-of';
+import { fakeServer, problem } from './server';
+
+const state = vi.hoisted(() => ({ params: {} as Record<string, string>, width: 'phone' }));
+vi.mock('expo-router', async (original) => ({
+  ...(await original<object>()),
+  useLocalSearchParams: () => state.params,
+}));
+vi.mock('@/shared/ui/theme/use-breakpoint', async (original) => ({
+  ...(await original<object>()),
+  useBreakpoint: () => state.width,
+}));
+
+let server: ReturnType<typeof fakeServer>;
+function open(role: Role, width: 'phone' | 'wide', section?: string, answers: typeof server.answers = {}) {
+  state.params = section ? { section } : {};
+  state.width = width;
+  server = fakeServer(role);
+  for (const path of ['chargers', 'meters', 'module-types', 'resistors', 'walls', 'invitations'])
+    server.answers[`GET /api/${path}`] = () => Response.json([]);
+  Object.assign(server.answers, answers);
+  draw(<Workshop />);
+}
+const parts = () => screen.getAllByRole('region').map((part) => part.getAttribute('aria-label'));
+
+// jsdom lays nothing out, so it cannot scroll.
+Element.prototype.scrollIntoView = () => {};
+
+beforeEach(() => {
+  emptyDevice();
+  vi.mocked(router.push).mockClear();
+});
+afterEach(() => vi.unstubAllGlobals());
+
+describe('the settings of the workshop', () => {
+  it('are eight rows on the phone, each a way to its part', async () => {
+    open('manager', 'phone');
+    fireEvent.click(await screen.findByText('Levelling resistors'));
+    expect(router.push).toHaveBeenCalledWith('/workshop?section=resistors');
+    expect(screen.queryByRole('region')).toBeNull();
+  });
+
+  it('are eight parts on the desk; the walls stand last, at the side of those who approve them', async () => {
+    open('manager', 'wide');
+    await waitFor(() => expect(parts()).toHaveLength(8));
+    expect(parts()).toEqual([
+      'People and roles',
+      'Chargers and channels',
+      'Module types',
+      'Meters',
+      'Levelling resistors',
+      'Limits',
+      'Name and hours',
+      'Walls',
+    ]);
+    expect(screen.getByRole('button', { name: 'Make the invitation' })).toBeTruthy();
+    expect(await screen.findByText('add a charger')).toBeTruthy();
+  });
+
+  it('can be read by a technician, with who may change them in place of the ways to do so', async () => {
+    open('technician', 'wide');
+    await waitFor(() => expect(parts()).toHaveLength(8));
+    expect(await screen.findByText('No charger yet. Nothing can be planned without one.')).toBeTruthy();
+    expect(screen.queryByText('add a charger')).toBeNull();
+    expect(screen.queryByRole('button', { name: 'Make the invitation' })).toBeNull();
+    expect((await screen.findAllByText(/Hella Brandt\.$/)).length).toBeGreaterThan(0);
+  });
+
+  it('say of one part that it could not be read, and read it again, while the others stand', async () => {
+    open('manager', 'wide', undefined, {
+      'GET /api/meters': () => problem(400, 'This cannot be asked so.'),
+    });
+    const meters = () => within(screen.getByRole('region', { name: 'Meters' }));
+    await waitFor(() => expect(meters().getByText('The meters could not be read.')).toBeTruthy(), { timeout: 10_000 });
+    expect(screen.getByText('No module type yet. Every spare is of one.')).toBeTruthy();
+    server.answers['GET /api/meters'] = () => Response.json([]);
+    fireEvent.click(meters().getByRole('button', { name: 'Try again' }));
+    await waitFor(() => expect(meters().getByText(/^No meter yet/)).toBeTruthy());
+  });
+});
+
+describe('inviting a person', () => {
+  const email = () => screen.getByLabelText<HTMLInputElement>('E-mail');
+  const make = () => screen.getByRole('button', { name: 'Make the invitation' });
+
+  it('pressed straight from a wrong address moves nothing before the click, keeps it, and sends nothing', async () => {
+    open('manager', 'phone', 'people');
+    await screen.findByText('Hella Brandt');
+    fireEvent.change(email(), { target: { value: 'bram at example.com' } });
+    const { down, click } = await pressFrom(email(), make, 'touch');
+    expect(click).toBe(down);
+    await waitFor(() => expect(email().getAttribute('aria-invalid')).toBe('true'));
+    expect(email().value).toBe('bram at example.com');
+    expect(server.writes()).toEqual([]);
+  });
+
+  it('shows the link once and empties the form', async () => {
+    open('manager', 'phone', 'people', {
+      'POST /api/invitations': () =>
+        Response.json({ url: 'https://bench.example.com/join?token=t', expiresAt: '2036-07-12T00:00:00.000Z' }),
+    });
+    await screen.findByText('Hella Brandt');
+    fireEvent.change(email(), { target: { value: 'bram@example.com' } });
+    fireEvent.blur(email());
+    fireEvent.click(make());
+    await waitFor(() => expect(document.body.innerHTML).toContain('https://bench.example.com/join?token=t'));
+    expect(server.writes()[0]!.body).toEqual({ email: 'bram@example.com', role: roles[0] });
+    expect(email().value).toBe('');
+    expect(email().getAttribute('aria-invalid')).toBeNull();
+  });
+});
