@@ -21,6 +21,7 @@ import { liveOpenCharges } from './open-charges';
 import { writePast } from './past';
 import { demoPeople, invitedEmail, memberOf, type DemoPerson } from './people';
 import { writeStock } from './stock';
+import { pairWall } from './wall';
 
 const MINUTE = 60_000;
 const DAY = 86_400_000;
@@ -86,6 +87,7 @@ async function writeDemo(deps: Deps, now: number): Promise<void> {
     { email: invitedEmail, role: 'technician', baseUrl: 'http://localhost' },
     now - 26 * 60 * MINUTE,
   );
+  await pairWall(deps, now);
   await setPasswords(deps, await hashes);
   await deps.dataSource.manager.update(Workshop, { id: demoWorkshopId }, { rev: 1 });
   deps.log.debug({ people, charges: count }, 'demo written');

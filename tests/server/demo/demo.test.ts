@@ -16,6 +16,7 @@ import type { ChargerDto, ModuleTypeDto } from '@/shared/contract/equipment';
 import type { PersonDto } from '@/shared/contract/people';
 import type { SpareDto } from '@/shared/contract/spare';
 import type { WaitsDto } from '@/shared/contract/waits';
+import type { WallDto } from '@/shared/contract/wall';
 import type { Role } from '@/shared/contract/roles';
 import { cookiesOf } from '../../support/cookies';
 import { makeAgent, makeTestServer, testNow, type TestAgent, type TestServer } from '../../support/server';
@@ -126,6 +127,26 @@ describe('the workshop of the demo', () => {
     ]);
     for (const { email } of people) expect(email).toMatch(/@harbourlane\.example\.com$/);
     expect(await read<unknown[]>('/api/invitations')).toHaveLength(1);
+  });
+
+  it('has one paired wall, approved by its foreman and heard of within the last minute', async () => {
+    const walls = await read<WallDto[]>('/api/walls', 'foreman');
+    expect(walls).toEqual([
+      expect.objectContaining({
+        name: 'Bench wall',
+        diagonalInches: 55,
+        distanceMetres: 7,
+        approvedBy: 'Hella Brandt',
+      }),
+    ]);
+    expect(testNow - Date.parse(walls[0]!.lastHeardAt!)).toBeLessThan(60_000);
+    expect(testNow - Date.parse(walls[0]!.createdAt)).toBeGreaterThan(86_400_000);
+  });
+
+  it('has no spare on the shelf whose reading a charge has made old', async () => {
+    const spares = await read<SpareDto[]>('/api/spares');
+    const moved = spares.filter(({ where, reading }) => where !== 'charge' && reading?.movedBy != null);
+    expect(moved.map(({ label }) => label)).toEqual([]);
   });
 
   it('has six chargers, four module types over three chemistries and 30 spares, two of them in quarantine', async () => {
