@@ -1,4 +1,3 @@
-import { useState } from 'react';
 import { View } from 'react-native';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ConfirmSheet } from '../primitives/confirm-sheet';
@@ -50,25 +49,37 @@ function wordsOf(kind: EndKind, charge: ChargeDto): EndWords {
   }
 }
 
+/** What is typed so far; null where nothing was. */
+export interface EndDraft {
+  note: string | null;
+  shelfPlace: string | null;
+}
+export const noEndDraft: EndDraft = { note: null, shelfPlace: null };
+
 /** The ways a charge ends by hand, but for a stop: fitted, back on the shelf, or dropped before it began. */
 export function EndSheet({
   kind,
   charge,
+  draft,
   busy,
   problem,
+  onDraft,
   onClose,
   onConfirm,
 }: {
   kind: EndKind;
   charge: ChargeDto;
+  draft: EndDraft;
   busy: boolean;
   problem: string | null;
+  onDraft: (draft: EndDraft) => void;
   onClose: () => void;
   /** What was typed; null: nothing. */
   onConfirm: (text: string | null) => void;
 }) {
   const words = wordsOf(kind, charge);
-  const [text, setText] = useState(kind === 'shelve' ? (charge.shelfPlace ?? '') : '');
+  const shelve = kind === 'shelve';
+  const text = shelve ? (draft.shelfPlace ?? charge.shelfPlace ?? '') : (draft.note ?? '');
   return (
     <ConfirmSheet
       open
@@ -85,9 +96,9 @@ export function EndSheet({
           <Field
             label={words.field}
             value={text}
-            onChangeText={setText}
-            kind={kind === 'shelve' ? 'label' : 'text'}
-            maxLength={kind === 'shelve' ? 30 : 300}
+            onChangeText={(typed) => onDraft({ ...draft, [shelve ? 'shelfPlace' : 'note']: typed })}
+            kind={shelve ? 'label' : 'text'}
+            maxLength={shelve ? 30 : 300}
           />
         </View>
       ) : null}

@@ -20,6 +20,7 @@ export interface LiveScreenProps {
   acts: ChargeActs;
   sheet: LiveSheet | null;
   stopDraft: LiveSheetsProps['stopDraft'];
+  endDraft: LiveSheetsProps['endDraft'];
   waiting: readonly WaitingReading[];
   /** After a check outside the tolerance: the soonest way to put it right. */
   topUp: { option: PlanOption | null; ruledOut: string | null } | null;

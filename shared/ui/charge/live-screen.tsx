@@ -57,6 +57,7 @@ export function LiveScreen(props: LiveScreenProps) {
         acts={acts}
         people={props.people}
         stopDraft={props.stopDraft}
+        endDraft={props.endDraft}
         onClose={() => props.onSheet(null)}
         onDropped={props.onBack}
       />

@@ -1,7 +1,7 @@
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { PersonDto } from '@/shared/contract/people';
 import { ClipOnSheet } from './clip-on-sheet';
-import { EndSheet } from './end-sheet';
+import { EndSheet, type EndDraft } from './end-sheet';
 import { HandOverSheet } from './hand-over-sheet';
 import { OffSinceSheet } from './off-since-sheet';
 import { StopSheet, type StopDraft } from './stop-sheet';
@@ -30,14 +30,16 @@ export interface LiveSheetsProps {
   sheet: LiveSheet | null;
   acts: ChargeActs;
   people: readonly PersonDto[] | undefined;
-  stopDraft: { value: StopDraft; set: (draft: StopDraft) => void; clear: () => void };
+  stopDraft: { value: StopDraft; set: (draft: StopDraft) => void };
+  endDraft: { value: EndDraft; set: (draft: EndDraft) => void };
   onClose: () => void;
   /** It was dropped: there is nothing to show any more. */
   onDropped: () => void;
 }
 
 /** The sheet that is open over the live screen. */
-export function LiveSheets({ charge, now, sheet, acts, people, stopDraft, onClose, onDropped }: LiveSheetsProps) {
+export function LiveSheets(props: LiveSheetsProps) {
+  const { charge, now, sheet, acts, people, stopDraft, endDraft, onClose, onDropped } = props;
   const common = { charge, busy: acts.busy, problem: acts.problem, onClose };
   switch (sheet) {
     case null:
@@ -79,6 +81,8 @@ export function LiveSheets({ charge, now, sheet, acts, people, stopDraft, onClos
         <EndSheet
           {...common}
           kind={sheet}
+          draft={endDraft.value}
+          onDraft={endDraft.set}
           onConfirm={(text) => {
             if (sheet === 'fit') acts.fit(text);
             else if (sheet === 'shelve') acts.shelve(text);

@@ -1,4 +1,3 @@
-import { useState } from 'react';
 import type { SpareDto } from '@/shared/contract/spare';
 import { ChoiceList } from '../primitives/choice-row';
 import { ConfirmSheet } from '../primitives/confirm-sheet';
@@ -11,6 +10,14 @@ export interface QuarantineInput {
   condition: SpareDto['condition'] | null;
   shelfPlace: string;
 }
+
+/** What is chosen and typed so far; a place of null stands for the spare's own. */
+export interface QuarantineDraft {
+  chosen: Seen | null;
+  words: string;
+  place: string | null;
+}
+export const noQuarantineDraft: QuarantineDraft = { chosen: null, words: '', place: null };
 
 type Seen = 'swollen' | 'leaking' | 'dented' | 'water' | 'deep-discharged' | 'other';
 const seen: readonly { value: Seen; title: string }[] = [
@@ -26,22 +33,25 @@ const seen: readonly { value: Seen; title: string }[] = [
 export function QuarantineSheet({
   spare,
   fact,
+  draft,
   busy,
   problem,
+  onDraft,
   onConfirm,
   onClose,
 }: {
   spare: Pick<SpareDto, 'label' | 'shelfPlace'>;
   /** What else falls away: its plan. */
   fact: string;
+  draft: QuarantineDraft;
   busy: boolean;
   problem: string | null;
+  onDraft: (draft: QuarantineDraft) => void;
   onConfirm: (input: QuarantineInput) => void;
   onClose: () => void;
 }) {
-  const [chosen, setChosen] = useState<Seen | null>(null);
-  const [words, setWords] = useState('');
-  const [place, setPlace] = useState(spare.shelfPlace ?? '');
+  const { chosen, words } = draft;
+  const place = draft.place ?? spare.shelfPlace ?? '';
   const title = seen.find(({ value }) => value === chosen)?.title ?? '';
   const reason = chosen === 'other' ? words.trim() : title;
   return (
@@ -62,11 +72,29 @@ export function QuarantineSheet({
       <Txt kind="label" style={{ marginTop: 12 }}>
         What was seen
       </Txt>
-      <ChoiceList label="What was seen" value={chosen} onChange={setChosen} outset={14} choices={seen} />
+      <ChoiceList
+        label="What was seen"
+        value={chosen}
+        onChange={(next) => onDraft({ ...draft, chosen: next })}
+        outset={14}
+        choices={seen}
+      />
       {chosen === 'other' ? (
-        <Field label="In a few words" value={words} onChangeText={setWords} maxLength={300} autoFocus />
+        <Field
+          label="In a few words"
+          value={words}
+          onChangeText={(typed) => onDraft({ ...draft, words: typed })}
+          maxLength={300}
+          autoFocus
+        />
       ) : null}
-      <Field label="Where it goes" kind="label" value={place} onChangeText={setPlace} maxLength={30} />
+      <Field
+        label="Where it goes"
+        kind="label"
+        value={place}
+        onChangeText={(typed) => onDraft({ ...draft, place: typed })}
+        maxLength={30}
+      />
       {problem ? (
         <Txt tone="alarm" bold role="alert">
           {problem}

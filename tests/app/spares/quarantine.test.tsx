@@ -1,19 +1,26 @@
 import { fireEvent, render, screen } from '@testing-library/react';
+import { useState } from 'react';
 import { describe, expect, it, vi } from 'vitest';
-import { QuarantineSheet } from '@/shared/ui/spare/quarantine-sheet';
+import { noQuarantineDraft, QuarantineSheet, type QuarantineInput } from '@/shared/ui/spare/quarantine-sheet';
 
-const open = () => {
-  const onConfirm = vi.fn();
-  render(
+function Sheet({ onConfirm }: { onConfirm: (input: QuarantineInput) => void }) {
+  const [draft, setDraft] = useState(noQuarantineDraft);
+  return (
     <QuarantineSheet
       spare={{ label: 'S-0408', shelfPlace: 'D4' }}
       fact="No plan takes it until a foreman releases it."
+      draft={draft}
       busy={false}
       problem={null}
+      onDraft={setDraft}
       onConfirm={onConfirm}
       onClose={() => {}}
-    />,
+    />
   );
+}
+const open = () => {
+  const onConfirm = vi.fn();
+  render(<Sheet onConfirm={onConfirm} />);
   return onConfirm;
 };
 const press = () => fireEvent.click(screen.getByRole('button', { name: 'Put in quarantine' }));

@@ -16,6 +16,7 @@ import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
 import { isOutside, type LiveAct } from '@/shared/ui/charge/live-acts';
 import { LiveScreen } from '@/shared/ui/charge/live-screen';
 import type { LiveSheet } from '@/shared/ui/charge/live-sheets';
+import { noEndDraft } from '@/shared/ui/charge/end-sheet';
 import { noStopDraft } from '@/shared/ui/charge/stop-sheet';
 import { soonestTopUp, topUpPath, topUpRequest } from '@/shared/ui/charge/top-up';
 import { clock } from '@/shared/ui/format/clock';
@@ -72,11 +73,18 @@ function Live({
   const member = useMember();
   const maySendOthers = useCan('charge:assign');
   const [sheet, setSheet] = useState<LiveSheet | null>(null);
-  const acts = useChargeActs(charge, () => setSheet(null), onRead);
+  const stopDraft = useDraft(`stop.${charge.id}`, noStopDraft);
+  const endDraft = useDraft(`end.${charge.id}`, noEndDraft);
+  const done = () => {
+    setSheet(null);
+    // The next hold has its own reason: nothing of this one stands there already.
+    stopDraft.clear();
+    endDraft.clear();
+  };
+  const acts = useChargeActs(charge, done, onRead);
   const people = usePeople().data;
   const workshop = useWorkshop().data;
   const type = useModuleType(charge.moduleTypeId).data;
-  const stopDraft = useDraft(`stop.${charge.id}`, noStopDraft);
   const queue = useReadingQueue(charge.id);
   const plan = usePlan(isOutside(charge) ? topUpRequest(charge) : null);
   const go = (path: string) => router.push(path as Href);
@@ -104,6 +112,7 @@ function Live({
       acts={acts}
       sheet={sheet}
       stopDraft={stopDraft}
+      endDraft={endDraft}
       waiting={queue.waiting}
       topUp={isOutside(charge) ? soonestTopUp(plan.data?.plan) : null}
       onBack={onBack}

@@ -4,6 +4,7 @@ import { View } from 'react-native';
 import { isConflict, isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useBoard } from '@/shared/client/board';
 import { useNow } from '@/shared/client/clock';
+import { useDraft } from '@/shared/client/drafts';
 import { useGate } from '@/shared/client/gate';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
@@ -20,7 +21,7 @@ import { Txt } from '@/shared/ui/primitives/txt';
 import { Columns } from '@/shared/ui/screen/columns';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
-import { QuarantineSheet, type QuarantineInput } from '@/shared/ui/spare/quarantine-sheet';
+import { noQuarantineDraft, QuarantineSheet, type QuarantineInput } from '@/shared/ui/spare/quarantine-sheet';
 import { ReadingsHistory } from '@/shared/ui/spare/readings-history';
 import { SpareCapacity } from '@/shared/ui/spare/spare-capacity';
 import { SpareCharges } from '@/shared/ui/spare/spare-charges';
@@ -165,6 +166,7 @@ function Quarantine({ spare, onClose, onStale }: { spare: SpareDto; onClose: () 
   const { zone, marks } = useFormats();
   const now = useNow(60_000);
   const quarantine = useQuarantineSpare();
+  const draft = useDraft(`quarantine.${spare.id}`, noQuarantineDraft);
   const card = useBoard().data?.charges.find((other) => other.id === spare.charge?.id);
   const confirm = (input: QuarantineInput) => {
     const { charge } = spare;
@@ -172,7 +174,13 @@ function Quarantine({ spare, onClose, onStale }: { spare: SpareDto; onClose: () 
     const seen = charge && { id: charge.id, rev: Math.max(charge.rev, card?.rev ?? 0) };
     quarantine.mutate(
       { id: spare.id, rev: spare.rev, ...input, charge: seen },
-      { onSuccess: onClose, onError: (error) => isConflict(error) && onStale() },
+      {
+        onSuccess: () => {
+          draft.clear();
+          onClose();
+        },
+        onError: (error) => isConflict(error) && onStale(),
+      },
     );
   };
   const at = card ? ` at ${moment(Date.parse(card.clipOnAt), zone, now, marks)}` : '';
@@ -184,6 +192,8 @@ function Quarantine({ spare, onClose, onStale }: { spare: SpareDto; onClose: () 
           ? `It is ${spare.charge.stage} for ${spare.charge.title}${at}. That plan falls away.`
           : 'No plan takes it until a foreman releases it.'
       }
+      draft={draft.value}
+      onDraft={draft.set}
       busy={quarantine.isPending}
       problem={quarantine.error ? sentenceOf(quarantine.error) : null}
       onConfirm={confirm}
