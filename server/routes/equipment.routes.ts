@@ -47,7 +47,8 @@ export const equipmentRoutes: RoutesModule = (route) => {
     method: 'delete',
     path: '/module-types/:id',
     policy: write,
-    handle: ({ deps, member, params, now }) => removeModuleType(deps, member, params.id!, now),
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) => removeModuleType(deps, member, params.id!, rev, now),
   });
 
   route({
@@ -82,7 +83,8 @@ export const equipmentRoutes: RoutesModule = (route) => {
     method: 'delete',
     path: '/chargers/:id',
     policy: write,
-    handle: ({ deps, member, params, now }) => retireCharger(deps, member, params.id!, now),
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) => retireCharger(deps, member, params.id!, rev, now),
   });
 
   route({ method: 'get', path: '/resistors', policy: read, handle: ({ deps, member }) => resistors(deps, member) });
@@ -106,7 +108,8 @@ export const equipmentRoutes: RoutesModule = (route) => {
     method: 'delete',
     path: '/resistors/:id',
     policy: write,
-    handle: ({ deps, member, params, now }) => removeResistor(deps, member, params.id!, now),
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) => removeResistor(deps, member, params.id!, rev, now),
   });
 
   route({ method: 'get', path: '/meters', policy: read, handle: ({ deps, member }) => meters(deps, member) });
@@ -130,6 +133,7 @@ export const equipmentRoutes: RoutesModule = (route) => {
     method: 'delete',
     path: '/meters/:id',
     policy: write,
-    handle: ({ deps, member, params, now }) => removeMeter(deps, member, params.id!, now),
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) => removeMeter(deps, member, params.id!, rev, now),
   });
 };

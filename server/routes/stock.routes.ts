@@ -63,7 +63,8 @@ export const stockRoutes: RoutesModule = (route) => {
     method: 'post',
     path: '/spares/:id/release',
     policy: { kind: 'capability', capability: 'spare:release' },
-    handle: ({ deps, member, params, now }) => releaseSpare(deps, member, params.id!, now),
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) => releaseSpare(deps, member, params.id!, rev, now),
   });
   route({
     method: 'get',

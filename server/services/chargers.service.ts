@@ -85,12 +85,13 @@ export async function changeCharger(
 
 /**
  * Takes a charger out of service: plans no longer offer it, and its past charges keep its name.
- * @throws DomainError 409 while a charge has one of its channels
+ * @throws DomainError 412 stale, 409 while a charge has one of its channels
  */
-export async function retireCharger(deps: Deps, member: Member, id: string, now: number): Promise<void> {
+export async function retireCharger(deps: Deps, member: Member, id: string, rev: number, now: number): Promise<void> {
   const { workshopId } = member;
   await inTransaction(deps, async (manager) => {
     const row = await known(manager, workshopId, id);
+    if (row.rev !== rev) throw stale(await dtoOf(manager, workshopId, id, now));
     const own = (await listChannels(manager, workshopId)).filter((channel) => channel.chargerId === id);
     await refuseInUse(
       manager,

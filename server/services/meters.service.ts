@@ -62,11 +62,12 @@ export async function changeMeter(
   return meterDto(changed);
 }
 
-/** @throws DomainError 409 while readings or chargers name it */
-export async function removeMeter(deps: Deps, member: Member, id: string, now: number): Promise<void> {
+/** @throws DomainError 412 stale, 409 while readings or chargers name it */
+export async function removeMeter(deps: Deps, member: Member, id: string, rev: number, now: number): Promise<void> {
   const { workshopId } = member;
   await inTransaction(deps, async (manager) => {
     const meter = await known(manager, workshopId, id);
+    if (meter.rev !== rev) throw stale(meterDto(meter));
     if ((await countReadingsWithMeter(manager, workshopId, id)) > 0)
       throw conflict('meter_in_use', `Readings were taken with ${meter.name}. A meter in use cannot be removed.`);
     if ((await countChargersWithMeter(manager, workshopId, id)) > 0)

@@ -72,10 +72,17 @@ export async function changeModuleType(
   return dto;
 }
 
-/** @throws DomainError 409 while spares or charges are of this type */
-export async function removeModuleType(deps: Deps, member: Member, id: string, now: number): Promise<void> {
+/** @throws DomainError 412 stale, 409 while spares or charges are of this type */
+export async function removeModuleType(
+  deps: Deps,
+  member: Member,
+  id: string,
+  rev: number,
+  now: number,
+): Promise<void> {
   await inTransaction(deps, async (manager) => {
     const present = await dtoOf(manager, member.workshopId, id);
+    if (present.rev !== rev) throw stale(present);
     if (present.spareCount + present.chargeCount > 0)
       throw conflict(
         'type_in_use',

@@ -91,8 +91,18 @@ async function takeOffSeen(
   return takeOffQueue(manager, member, file, input.reason, now);
 }
 
-/** @throws DomainError 409 where it is not in quarantine */
-export async function releaseSpare(deps: Deps, member: Member, id: string, now: number): Promise<SpareDto> {
+/**
+ * Gives a spare back to the shelf.
+ * @param rev revision the person saw: what was set aside anew meanwhile, for another reason, is not released with it
+ * @throws DomainError 409 where it is not in quarantine, 412 stale
+ */
+export async function releaseSpare(
+  deps: Deps,
+  member: Member,
+  id: string,
+  rev: number,
+  now: number,
+): Promise<SpareDto> {
   const { workshopId } = member;
   const dto = await inTransaction(deps, async (manager) => {
     const spare = await knownSpare(manager, workshopId, id);
@@ -102,6 +112,7 @@ export async function releaseSpare(deps: Deps, member: Member, id: string, now: 
         `${spare.label} is not in quarantine.`,
         await spareDtoOf(manager, workshopId, id),
       );
+    if (spare.rev !== rev) throw stale(await spareDtoOf(manager, workshopId, id));
     Object.assign(spare, {
       quarantinedAt: null,
       quarantineReason: null,

@@ -56,10 +56,11 @@ export async function changeResistor(
   return resistorDto(changed);
 }
 
-/** Charges keep the resistor they were planned with, so it may go at any time. */
-export async function removeResistor(deps: Deps, member: Member, id: string, now: number): Promise<void> {
+/** Charges keep the resistor they were planned with, so it may go at any time. @throws DomainError 412 stale */
+export async function removeResistor(deps: Deps, member: Member, id: string, rev: number, now: number): Promise<void> {
   await inTransaction(deps, async (manager) => {
-    await known(manager, member.workshopId, id);
+    const resistor = await known(manager, member.workshopId, id);
+    if (resistor.rev !== rev) throw stale(resistorDto(resistor));
     await deleteResistor(manager, member.workshopId, id);
   });
   announceEquipment(deps, member, now);

@@ -32,6 +32,6 @@ export const useSaveCharger = () =>
 
 export const useRetireCharger = () =>
   useWrite({
-    send: ({ id, rev }: { id: string; rev?: number }) => api.delete(`/chargers/${id}`, { rev }),
+    send: ({ id, rev }: { id: string; rev: number }) => api.delete(`/chargers/${id}`, { rev }),
     changes: [roots.chargers, roots.board],
   });

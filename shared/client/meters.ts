@@ -23,6 +23,6 @@ export const useSaveMeter = () =>
 
 export const useRemoveMeter = () =>
   useWrite({
-    send: ({ id, rev }: { id: string; rev?: number }) => api.delete(`/meters/${id}`, { rev }),
+    send: ({ id, rev }: { id: string; rev: number }) => api.delete(`/meters/${id}`, { rev }),
     changes: [roots.meters],
   });

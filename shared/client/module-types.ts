@@ -34,6 +34,6 @@ export const useSaveModuleType = () =>
 
 export const useRemoveModuleType = () =>
   useWrite({
-    send: ({ id, rev }: { id: string; rev?: number }) => api.delete(`/module-types/${id}`, { rev }),
+    send: ({ id, rev }: { id: string; rev: number }) => api.delete(`/module-types/${id}`, { rev }),
     changes: [roots.moduleTypes],
   });

@@ -23,6 +23,6 @@ export const useSaveResistor = () =>
 
 export const useRemoveResistor = () =>
   useWrite({
-    send: ({ id, rev }: { id: string; rev?: number }) => api.delete(`/resistors/${id}`, { rev }),
+    send: ({ id, rev }: { id: string; rev: number }) => api.delete(`/resistors/${id}`, { rev }),
     changes: [roots.resistors],
   });

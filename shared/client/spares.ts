@@ -85,4 +85,6 @@ export const useQuarantineSpare = () =>
   });
 
 export const useReleaseSpare = () =>
-  useWrite(spareWrite(({ id }: { id: string }) => api.post<SpareDto>(`/spares/${id}/release`, {})));
+  useWrite(
+    spareWrite(({ id, rev }: { id: string; rev: number }) => api.post<SpareDto>(`/spares/${id}/release`, {}, { rev })),
+  );

@@ -123,7 +123,7 @@ describe('chargers', () => {
       return Object.values((body as PlanDto).channels).map(({ name }) => name);
     };
     expect(await planned()).toContain('D1');
-    await manager.delete(`/api/chargers/${made.id}`).expect(204);
+    await manager.delete(`/api/chargers/${made.id}`).set('If-Match', '"1"').expect(204);
     expect(await read(made.id)).toMatchObject({ retired: true, rev: 2 });
     expect(await planned()).not.toContain('D1');
     await manager
@@ -137,7 +137,7 @@ describe('chargers', () => {
     const path = `/api/chargers/${stocked.charger.id}`;
     await other.get(path).expect(404);
     await other.patch(path, chargerForm()).set('If-Match', '"1"').expect(404);
-    await other.delete(path).expect(404);
+    await other.delete(path).set('If-Match', '"1"').expect(404);
     expect((await other.get('/api/chargers')).body).toEqual([]);
   });
 });

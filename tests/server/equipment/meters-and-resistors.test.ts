@@ -48,15 +48,15 @@ describe('meters', () => {
   });
 
   it('that readings or a charger name are not removed', async () => {
-    const answer = await manager.delete(`/api/meters/${stocked.meter.id}`).expect(409);
+    const answer = await manager.delete(`/api/meters/${stocked.meter.id}`).set('If-Match', '"1"').expect(409);
     expect(answer.body.detail).toBe('Readings were taken with Hand meter 1. A meter in use cannot be removed.');
     const unused = await created<MeterDto>(manager, '/api/meters', meter({ name: 'Unused' }));
-    await manager.delete(`/api/meters/${unused.id}`).expect(204);
+    await manager.delete(`/api/meters/${unused.id}`).set('If-Match', '"1"').expect(204);
   });
 
   it('of another workshop are unknown: 404', async () => {
     await other.patch(`/api/meters/${stocked.meter.id}`, meter()).set('If-Match', '1').expect(404);
-    await other.delete(`/api/meters/${stocked.meter.id}`).expect(404);
+    await other.delete(`/api/meters/${stocked.meter.id}`).set('If-Match', '"1"').expect(404);
     expect((await other.get('/api/meters')).body).toEqual([]);
   });
 });
@@ -73,9 +73,13 @@ describe('levelling resistors', () => {
     expect((await server.agentFor('foreman').get('/api/resistors')).body).toMatchObject([
       { name: 'Load 1', maxWatts: 100 },
     ]);
-    await other.delete(`/api/resistors/${made.id}`).expect(404);
+    await other.delete(`/api/resistors/${made.id}`).set('If-Match', '"1"').expect(404);
     await other.patch(`/api/resistors/${made.id}`, resistor()).set('If-Match', '2').expect(404);
-    await manager.delete(`/api/resistors/${made.id}`).expect(204);
+    // Removed as it was seen: somebody has changed it since.
+    const late = await manager.delete(`/api/resistors/${made.id}`).set('If-Match', '"1"').expect(412);
+    expect(late.body.present).toMatchObject({ maxWatts: 100, rev: 2 });
+    await manager.delete(`/api/resistors/${made.id}`).expect(428);
+    await manager.delete(`/api/resistors/${made.id}`).set('If-Match', '"2"').expect(204);
     expect((await manager.get('/api/resistors')).body).toEqual([]);
   });
 

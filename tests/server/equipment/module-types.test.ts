@@ -98,7 +98,9 @@ describe('module types', () => {
   });
 
   it('in use are not removed, and the sentence counts why', async () => {
-    const answer = await manager.delete(`/api/module-types/${stocked.type.id}`).expect(409);
+    const path = `/api/module-types/${stocked.type.id}`;
+    const { rev } = (await manager.get(path).expect(200)).body as ModuleTypeDto;
+    const answer = await manager.delete(path).set('If-Match', `"${rev}"`).expect(409);
     expect(answer.body).toMatchObject({
       code: 'type_in_use',
       detail: '2-series 66 Ah has 1 spare and 0 charges. A type in use cannot be removed.',
@@ -107,7 +109,7 @@ describe('module types', () => {
 
   it('not in use are removed', async () => {
     const type = await created<ModuleTypeDto>(manager, '/api/module-types', moduleTypeForm({ name: 'Gone' }));
-    await manager.delete(`/api/module-types/${type.id}`).expect(204);
+    await manager.delete(`/api/module-types/${type.id}`).set('If-Match', '"1"').expect(204);
     await manager.get(`/api/module-types/${type.id}`).expect(404);
   });
 
@@ -117,7 +119,7 @@ describe('module types', () => {
     const answers = [
       await other.get(path),
       await other.patch(path, moduleTypeForm()).set('If-Match', '"1"'),
-      await other.delete(path),
+      await other.delete(path).set('If-Match', '"1"'),
     ];
     for (const answer of answers) {
       expect(answer.status).toBe(404);

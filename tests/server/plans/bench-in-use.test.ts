@@ -49,7 +49,7 @@ describe('a channel that runs a charge', () => {
 
   it('is not taken out of service', async () => {
     const [charger] = await chargers();
-    const retired = await bench.as('manager').delete(`/api/chargers/${charger!.id}`).expect(409);
+    const retired = await bench.as('manager').delete(`/api/chargers/${charger!.id}`).set('If-Match', '"1"').expect(409);
     expect(retired.body.detail).toBe(
       `A1 is taken by ${charge.title}. Take it out of service when that charge is over.`,
     );
@@ -62,7 +62,11 @@ describe('a spare on a charge', () => {
   it('is shown with it, and keeps its type in use', async () => {
     const spare = (await bench.as('technician').get(`/api/spares/${runningSpare}`).expect(200)).body as SpareDto;
     expect(spare).toMatchObject({ where: 'charge', charge: { id: charge.id, stage: 'charging' } });
-    const types = await bench.as('manager').delete(`/api/module-types/${bench.typeId}`).expect(409);
+    const types = await bench
+      .as('manager')
+      .delete(`/api/module-types/${bench.typeId}`)
+      .set('If-Match', '"1"')
+      .expect(409);
     expect(types.body.detail).toBe('2-series 66 Ah has 2 spares and 1 charge. A type in use cannot be removed.');
   });
 

@@ -75,15 +75,26 @@ describe('quarantine', () => {
       rev: 2,
     });
     expect(server.hub.told.at(-1)).toMatchObject({ workshopId: server.own.id, event: 'stock:changed' });
-    await technician.post(`${path}/release`).expect(403);
+    await technician.post(`${path}/release`).set('If-Match', '"2"').expect(403);
     expect((await technician.get('/api/spares?where=quarantine')).body).toHaveLength(1);
     const again = await technician.post(`${path}/quarantine`, { reason: 'swollen' }).set('If-Match', '"1"').expect(409);
     expect(again.body.detail).toBe('S-32 is in quarantine already: dented at the corner');
-    expect((await foreman.post(`${path}/release`).expect(200)).body).toMatchObject({
+    expect((await foreman.post(`${path}/release`).set('If-Match', '"2"').expect(200)).body).toMatchObject({
       where: 'shelf',
       quarantine: null,
     });
-    await foreman.post(`${path}/release`).expect(409);
+    await foreman.post(`${path}/release`).set('If-Match', '"3"').expect(409);
+  });
+
+  it('is released only as it was seen: what was set aside anew for another reason stays aside', async () => {
+    const path = `/api/spares/${(await newSpare('S-33')).id}`;
+    const at = (rev: number) => ({ 'If-Match': `"${rev}"` });
+    await technician.post(`${path}/quarantine`, { reason: 'label missing' }).set(at(1)).expect(200);
+    await foreman.post(`${path}/release`).set(at(2)).expect(200);
+    await technician.post(`${path}/quarantine`, { reason: 'swollen' }).set(at(3)).expect(200);
+    const late = await foreman.post(`${path}/release`).set(at(2)).expect(412);
+    expect(late.body.present).toMatchObject({ where: 'quarantine', quarantine: { reason: 'swollen' }, rev: 4 });
+    await foreman.post(`${path}/release`).expect(428);
   });
 
   it('asks for a reason', async () => {

@@ -155,7 +155,7 @@ describe('spares', () => {
       await other.patch(path, spareForm(stocked.type.id)).set('If-Match', '"1"'),
       await other.post(`${path}/readings`, readingForm()),
       await other.post(`${path}/quarantine`, { reason: 'none of theirs' }).set('If-Match', '"1"'),
-      await other.post(`${path}/release`),
+      await other.post(`${path}/release`).set('If-Match', '"1"'),
     ];
     expect(answers.map(({ status }) => status)).toEqual([404, 404, 404, 404, 404, 404]);
     expect((await other.get('/api/spares')).body).toEqual([]);

@@ -156,7 +156,7 @@ function Page({ spare, onBack, onStale }: { spare: SpareDto; onBack: () => void;
         }
       />
       {sheet === 'quarantine' ? <Quarantine spare={spare} onClose={() => setSheet(null)} onStale={onStale} /> : null}
-      {sheet === 'release' ? <Release spare={spare} onClose={() => setSheet(null)} /> : null}
+      {sheet === 'release' ? <Release spare={spare} onClose={() => setSheet(null)} onStale={onStale} /> : null}
     </Screen>
   );
 }
@@ -202,7 +202,7 @@ function Quarantine({ spare, onClose, onStale }: { spare: SpareDto; onClose: () 
   );
 }
 
-function Release({ spare, onClose }: { spare: SpareDto; onClose: () => void }) {
+function Release({ spare, onClose, onStale }: { spare: SpareDto; onClose: () => void; onStale: () => void }) {
   const { marks } = useFormats();
   const release = useReleaseSpare();
   const still = ruledOutWords({ ...spare, quarantine: null }, marks);
@@ -218,7 +218,12 @@ function Release({ spare, onClose }: { spare: SpareDto; onClose: () => void }) {
       confirm="Release from quarantine"
       safe="Keep it in quarantine"
       busy={release.isPending}
-      onConfirm={() => release.mutate({ id: spare.id }, { onSuccess: onClose })}
+      onConfirm={() =>
+        release.mutate(
+          { id: spare.id, rev: spare.rev },
+          { onSuccess: onClose, onError: (error) => isConflict(error) && onStale() },
+        )
+      }
       onClose={onClose}
     >
       {spare.quarantine ? <Txt>{`Put in by ${spare.quarantine.by.name}: ${spare.quarantine.reason}.`}</Txt> : null}
