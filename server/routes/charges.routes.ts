@@ -77,6 +77,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: plan,
     body: queueChargeSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => queueCharge(deps, member, idOf(params), rev, body, now),
   });
   route({
@@ -94,6 +95,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: run,
     body: holdSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => holdCharge(deps, member, idOf(params), rev, body, now),
   });
   route({
@@ -102,6 +104,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: run,
     body: resumeSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => resumeCharge(deps, member, idOf(params), rev, body, now),
   });
   route({
@@ -110,6 +113,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: run,
     body: stopSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => stopCharge(deps, member, idOf(params), rev, body, now),
   });
   route({
@@ -118,6 +122,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: run,
     body: currentOffSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => currentOff(deps, member, idOf(params), rev, body, now),
   });
   route({
@@ -126,6 +131,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: run,
     body: nextStepSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => nextStep(deps, member, idOf(params), rev, body, now),
   });
   route({
@@ -149,6 +155,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     path: '/charges/:id/look-ins',
     policy: run,
     body: lookInSchema,
+    idempotent: true,
     handle: ({ deps, member, params, body, now }) => lookIn(deps, member, idOf(params), body, now),
   });
   route({
@@ -174,6 +181,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: run,
     body: fitSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => fitCharge(deps, member, idOf(params), rev, body, now),
   });
   route({
@@ -182,6 +190,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     policy: run,
     body: shelveSchema,
     ifMatch: true,
+    idempotent: true,
     handle: ({ deps, member, params, body, rev, now }) => shelveCharge(deps, member, idOf(params), rev, body, now),
   });
 };

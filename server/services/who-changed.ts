@@ -52,7 +52,8 @@ export async function lastChange(
 ): Promise<LastChange | null> {
   const { charge, people, workshop } = file;
   const events = (await eventsOf(manager, charge.workshopId, [charge.id])).get(charge.id) ?? [];
-  const event = causeOf(kinds ? events.filter(({ kind }) => kinds.includes(kind)) : events);
+  // Who takes an alert changes the alert: the charge keeps its revision.
+  const event = causeOf(events.filter(({ kind }) => (kinds ? kinds.includes(kind) : kind !== 'alert')));
   if (event === null) return null;
   const name = event.personId === null ? null : (people.get(event.personId)?.name ?? 'Somebody');
   const by = event.personId === null || name === null ? null : { id: event.personId, name };

@@ -107,7 +107,7 @@ describe('one alert a cause', () => {
     expect(first).toMatchObject({ level: 'tell' });
     expect(first!.title).toBe(`Look-in at ${charge.title}`);
     expect(first!.seen).toMatch(/^A look-in is due\. 10\.0\u00a0A and 7\.\d\d\u00a0V are expected\.$/);
-    await bench.as('technician').post(`/api/charges/${charge.id}/look-ins`, { note: '23 °C, clips cool' }).expect(200);
+    await did(bench, charge, 'look-ins', { note: '23 °C, clips cool' });
     expect((await open()).filter((alert) => alert.kind === 'look-in-due')).toEqual([]);
     await until(at(charge.startedAt) + 121 * minute);
     expect((await open()).filter((alert) => alert.kind === 'look-in-due')).toHaveLength(1);

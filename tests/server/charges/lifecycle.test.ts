@@ -16,6 +16,7 @@ import {
   running,
   seen,
   type Bench,
+  key,
 } from './bench';
 
 let bench: Bench;
@@ -160,6 +161,7 @@ describe('whose it is', () => {
     await stranger
       .post(`/api/charges/${charge.id}/stop`, { reason: 'x' })
       .set('If-Match', `"${charge.rev}"`)
+      .set('Idempotency-Key', key())
       .expect(404);
     expect((await seen(bench, charge.id)).stage).toBe('charging');
   });

@@ -1,5 +1,6 @@
 import { afterEach, beforeEach, expect, test } from 'vitest';
 import type { ChargeDto } from '@/shared/contract/charge';
+import { ChargeEvent } from '@/server/entities/charge-event';
 import { ChannelHold } from '@/server/entities/channel-hold';
 import { RunStretch } from '@/server/entities/run-stretch';
 import {
@@ -71,6 +72,31 @@ test('a start that a lost connection repeats under its key is done once and answ
   expect((again.body as ChargeDto).startedAt).toBe((first.body as ChargeDto).startedAt);
 });
 
+test.each([
+  ['hold', { reason: 'The lift is needed' }],
+  ['stop', { reason: 'The lift is needed' }],
+  ['current-off', {}],
+  ['look-ins', { note: 'cool' }],
+])(
+  '%s whose answer was lost is done once when it is pressed again, and answered as the first time',
+  async (what, body) => {
+    const charge = await running(bench, { spareId: await bench.spare('S-0001') });
+    const send = () =>
+      bench
+        .as('technician')
+        .post(`/api/charges/${charge.id}/${what}`, body)
+        .set('If-Match', `"${charge.rev}"`)
+        .set('Idempotency-Key', `the-same-${what}`);
+    const first = await send();
+    expect(first.status, JSON.stringify(first.body)).toBe(200);
+    bench.server.clock.advance(5_000);
+    const again = await send();
+    expect(again.status, JSON.stringify(again.body)).toBe(200);
+    expect(again.body).toEqual(first.body);
+    expect((await seen(bench, charge.id)).events).toEqual((first.body as ChargeDto).events);
+  },
+);
+
 test('hold and stop at once: one wins, the other sees what it became', async () => {
   const charge = await running(bench, { spareId: await bench.spare('S-0001') });
   const [hold, stop] = await Promise.all([
@@ -99,6 +125,12 @@ test('who comes too late is told who won and when, in the workshop’s time, wit
     by: { id: bench.server.own.people.foreman.id, name: 'Foreman of own' },
     at: held.heldAt,
     did: 'held it',
+  });
+  // Who has taken an alert since has not changed the charge.
+  await bench.server.deps.dataSource.manager.insert(ChargeEvent, {
+    ...{ id: 'alert-taken', workshopId: bench.server.own.id, chargeId: charge.id, kind: 'alert' },
+    ...{ personId: bench.server.own.people.manager.id, text: 'Has it.' },
+    ...{ at: bench.server.clock.now(), createdAt: bench.server.clock.now() },
   });
   // The same person on another phone is told as such.
   expect(detail(await act(bench, charge, 'stop', { reason: 'smell' }, 'foreman'))).toBe(
@@ -158,8 +190,8 @@ test('40 writes of all kinds at once on 8 charges end with every row in place an
     const writes = charges.flatMap((charge) => [
       wide.as('technician').post(`/api/charges/${charge.id}/readings`, { amps: '10' }).set('Idempotency-Key', key()),
       wide.as('foreman').post(`/api/charges/${charge.id}/readings`, { celsius: '23' }).set('Idempotency-Key', key()),
-      wide.as('technician').post(`/api/charges/${charge.id}/look-ins`, {}),
-      wide.as('foreman').post(`/api/charges/${charge.id}/look-ins`, { note: 'cool' }),
+      wide.as('technician').post(`/api/charges/${charge.id}/look-ins`, {}).set('Idempotency-Key', key()),
+      wide.as('foreman').post(`/api/charges/${charge.id}/look-ins`, { note: 'cool' }).set('Idempotency-Key', key()),
       wide.as('technician').post(`/api/charges/${charge.id}/readings`, { amps: 'x' }).set('Idempotency-Key', key()),
     ]);
     const answers = await Promise.all(writes);
