@@ -28,7 +28,17 @@ export async function changeMe(deps: Deps, member: Member, input: ChangeMeInput,
     passwordHash = await deps.passwords.hash(input.password);
   }
   const ended = await inTransaction(deps, async (manager) => {
-    await updatePerson(manager, workshopId, personId, { name, ...(passwordHash ? { passwordHash } : {}) });
+    const present = await findPerson(manager, workshopId, personId);
+    if (!present) throw notFound('This person');
+    // The hash took its time: a password that was changed meanwhile is not overwritten by who knew only the last one.
+    if (passwordHash && present.passwordHash !== person.passwordHash)
+      throw invalid({ currentPassword: 'This is not your present password any more.' });
+    // A manager's form must not put the old name back unseen.
+    const renamed = input.name !== undefined && input.name !== present.name;
+    await updatePerson(manager, workshopId, personId, {
+      ...(renamed ? { name, rev: present.rev + 1 } : {}),
+      ...(passwordHash ? { passwordHash } : {}),
+    });
     return passwordHash ? endSessionsOf(manager, workshopId, personId, now, 'password', sessionId) : [];
   });
   for (const other of ended) deps.hub.end({ sessionId: other }, 'revoked');

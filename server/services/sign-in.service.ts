@@ -3,7 +3,7 @@ import type { SignInInput } from '@/shared/contract/session';
 import type { Deps } from '../deps';
 import { demoWorkshopId } from '../demo/demo-workshop';
 import { DomainError, forbidden, notFound } from '../errors/domain-error';
-import { findFirstOfRole, findPersonByEmail } from '../repositories/people.repository';
+import { findFirstOfRole, findPerson, findPersonByEmail } from '../repositories/people.repository';
 import { knownDevice, rememberDevice } from './device-cookie';
 import { addressKey } from './limits';
 import { openSession, type SignedIn } from './sessions.service';
@@ -45,6 +45,8 @@ async function countTry(deps: Deps, email: string, device: AskingDevice): Promis
   };
 }
 
+const wrongPair = () => new DomainError(401, 'wrong_sign_in', 'E-mail address and password do not belong together.');
+
 /**
  * Signs in with address and password. The answer and the work are the same for an unknown address and a wrong password.
  * @throws DomainError 401 for the wrong pair, 403 for a disabled person (who knew the password), 429 when throttled
@@ -55,12 +57,17 @@ export async function signIn(deps: Deps, input: SignInInput, device: AskingDevic
   const right = await deps.passwords.matches(input.password, person?.passwordHash ?? null);
   if (!person || !right) {
     deps.log.warn({ address: device.address }, 'sign-in refused');
-    throw new DomainError(401, 'wrong_sign_in', 'E-mail address and password do not belong together.');
+    throw wrongPair();
   }
   await forgive();
   if (person.disabledAt !== null)
     throw forbidden('A manager of your workshop has switched your sign-in off. Ask them.');
-  const signedIn = await inTransaction(deps, (manager) => openSession(deps, manager, person, device.userAgent, now));
+  const signedIn = await inTransaction(deps, async (manager) => {
+    // Comparing takes a third of a second: who changed the password meanwhile has ended the sessions of the old one.
+    const present = await findPerson(manager, person.workshopId, person.id);
+    if (present?.passwordHash !== person.passwordHash) throw wrongPair();
+    return openSession(deps, manager, present, device.userAgent, now);
+  });
   deps.log.info({ personId: person.id }, 'signed in');
   return withDevice(deps, signedIn, device);
 }
