@@ -1,64 +1,100 @@
 import { useQuery } from '@tanstack/react-query';
 import { useEffect, useRef } from 'react';
+import type { AlertDto } from '@/shared/contract/alert';
+import { concerns, isOpen, mostUrgent, ringOf, ringsSince } from './alarm-rings';
 import { alertsQuery, useAlerts } from './alerts';
-import { concerns, mostUrgent, ringOf } from './alarm-rings';
 import { boardQuery } from './board';
 import { serverNow } from './clock';
+import { toldOf } from './heard-alerts';
 import { onAlert } from './live';
 import { showNotice } from './notify';
 import { queryClient } from './query-client';
 import { useSession } from './session';
-import { keepSound, playSound } from './sound';
+import { canRing, keepSound, playSound } from './sound';
 
-/** A slow announcement may be this late and still ring. */
-const lateMs = 20_000;
+/** What is older than this when the device meets it was missed here: it is told by a notice too. */
+const missedAfterMs = 20_000;
+/** So long a page that is looked at again waits for the present alerts, so as not to ring for what was taken meanwhile. */
+const askAgainMs = 3000;
 
-/** Rings for the person signed in, as long as the page is open; a notice is shown while the page is not looked at. */
+/**
+ * Rings for the person signed in, as long as the page is open; a notice is shown while the page is not looked at. What
+ * was raised while this device was away rings once, with a notice, as soon as it is known here and sound may play.
+ */
 export function useAlarmBell(): void {
   const personId = useSession().data?.person.id ?? null;
-  const alerts = useAlerts().data;
-  const ringing = useRef({ alerts: alerts ?? [], heardTo: new Map<string, number>() });
-  useEffect(() => {
-    ringing.current.alerts = alerts ?? [];
-  }, [alerts]);
+  // Asked for here, read from the cache by the bell.
+  useAlerts();
 
   useEffect(keepSound, []);
 
   useEffect(() => {
     if (!personId) return;
-    const { heardTo } = ringing.current;
-    const mounted = serverNow();
-    const timer = setInterval(() => {
-      const now = serverNow();
-      const sounds = ringing.current.alerts.flatMap((alert) => {
-        // Each alert has its own ear: one that is announced a moment late still rings, none rings twice.
-        const from = heardTo.get(alert.id) ?? Math.max(mounted, now - lateMs);
-        heardTo.set(alert.id, now);
-        return ringOf(alert, personId, from, now) ?? [];
-      });
-      const sound = mostUrgent(sounds);
-      if (sound) playSound(sound);
-    }, 1000);
-    return () => clearInterval(timer);
-  }, [personId]);
-
-  useEffect(() => {
-    if (!personId) return;
-    return onAlert((alert) => {
-      queryClient.setQueryData(alertsQuery().queryKey, (known) =>
-        known && !known.some(({ id }) => id === alert.id) ? [alert, ...known] : known,
-      );
+    let shownAgainAt = -Infinity;
+    const look = () => {
+      const { data, dataUpdatedAt = 0 } = queryClient.getQueryState(alertsQuery().queryKey) ?? {};
+      if (!data) return;
+      if (dataUpdatedAt < shownAgainAt && Date.now() < shownAgainAt + askAgainMs) return;
+      ringFor(data, personId);
+    };
+    const seen = () => {
+      if (document.visibilityState !== 'visible') return;
+      shownAgainAt = Date.now();
+      void queryClient.invalidateQueries({ queryKey: alertsQuery().queryKey });
+    };
+    const timer = setInterval(look, 1000);
+    document.addEventListener('visibilitychange', seen);
+    const stop = onAlert((alert) => {
+      queryClient.setQueryData(alertsQuery().queryKey, (known) => known && withAlert(known, alert));
       if (document.visibilityState === 'visible' || !concerns(alert, personId)) return;
-      void showNotice({
-        title: alert.title,
-        body: [alert.seen, alert.checkFirst].filter(Boolean).join(' '),
-        url: `/charges/${alert.chargeId}`,
-        tag: alert.id,
-      });
+      const told = toldOf(queryClient.getQueryData(alertsQuery().queryKey) ?? [alert]);
+      told.of(alert).met = true;
+      told.keep();
+      show(alert);
     });
+    return () => {
+      clearInterval(timer);
+      document.removeEventListener('visibilitychange', seen);
+      stop();
+    };
   }, [personId]);
 
   useRestTone(personId);
+}
+
+/** Told again or passed on it comes under the same id: the newer takes the place of the older. */
+const withAlert = (known: AlertDto[], alert: AlertDto): AlertDto[] =>
+  known.some(({ id }) => id === alert.id) ? known.map((one) => (one.id === alert.id ? alert : one)) : [alert, ...known];
+
+function ringFor(alerts: AlertDto[], personId: string): void {
+  const now = serverNow();
+  const told = toldOf(alerts);
+  const due = alerts.filter((alert) => isOpen(alert) && concerns(alert, personId));
+  for (const alert of due.filter((one) => !told.of(one).met)) {
+    if (document.visibilityState !== 'visible' || now - ringsSince(alert) > missedAfterMs) show(alert);
+    told.of(alert).met = true;
+  }
+  // Before the first tap nothing is heard: what is due waits for the tap.
+  if (canRing()) {
+    const sounds = due.flatMap((alert) => {
+      const entry = told.of(alert);
+      const ring = ringOf(alert, personId, entry.heardTo, now);
+      if (ring) entry.heardTo = now;
+      return ring ?? [];
+    });
+    const sound = mostUrgent(sounds);
+    if (sound) playSound(sound);
+  }
+  told.keep();
+}
+
+function show(alert: AlertDto): void {
+  void showNotice({
+    title: alert.title,
+    body: [alert.seen, alert.checkFirst].filter(Boolean).join(' '),
+    url: `/charges/${alert.chargeId}`,
+    tag: alert.id,
+  });
 }
 
 /** One low tone when the rest of one's own charge begins. */

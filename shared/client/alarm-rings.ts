@@ -1,36 +1,54 @@
 /** When an alert rings, as a pure rule: raised once, again where the look says so, until somebody has it. */
 import type { AlertDto, AlertKind } from '@/shared/contract/alert';
+import type { Instant } from '@/shared/contract/common';
 import type { SoundName } from './sound-contours';
 
 const minute = 60_000;
+/** After the first ring of what waits for a hand; what only tells rings once. */
+const again = [0, 5 * minute, 15 * minute];
 const rules: Record<AlertKind, { sound: SoundName; after: readonly number[]; everyMs?: number }> = {
-  'charge-done': { sound: 'ready', after: [0] },
-  'check-due': { sound: 'check-due', after: [0, 5 * minute, 15 * minute] },
-  'step-swap': { sound: 'check-due', after: [0, 5 * minute, 15 * minute] },
+  'charge-done': { sound: 'ready', after: again },
+  'check-due': { sound: 'check-due', after: again },
+  'step-swap': { sound: 'check-due', after: again },
   overdue: { sound: 'overdue', after: [0], everyMs: minute },
   'look-in-due': { sound: 'look-in', after: [0] },
 };
 const urgency: readonly SoundName[] = ['overdue', 'check-due', 'ready', 'look-in'];
 
+/** Neither taken nor over. */
+export const isOpen = (alert: AlertDto): boolean => alert.takenBy === null && alert.clearedAt === null;
+
 /** Whom an alert is for: its person, everybody where it has none, everybody when it is an alarm. */
 export const concerns = (alert: AlertDto, personId: string): boolean =>
   alert.for === null || alert.for.id === personId || alert.level === 'alarm';
 
+/** An alert as the server passes it on; one that was never passed has no such instant. */
+type Passable = AlertDto & { passedAt?: Instant | null };
+
+/** Since when it rings, epoch ms: for whom it was passed to, from then. */
+export const ringsSince = (alert: Passable): number => Date.parse(alert.passedAt ?? alert.raisedAt);
+
 /** Whether the alert rings after `from` and not later than `to` (epoch ms). */
 export function ringsBetween(alert: AlertDto, from: number, to: number): boolean {
-  if (alert.takenBy !== null || alert.clearedAt !== null) return false;
-  const raised = Date.parse(alert.raisedAt);
+  if (!isOpen(alert)) return false;
+  const since = ringsSince(alert);
   const { after, everyMs } = rules[alert.kind];
-  if (after.some((ms) => raised + ms > from && raised + ms <= to)) return true;
+  const turns = alert.level === 'tell' ? after.slice(0, 1) : after;
+  if (turns.some((ms) => since + ms > from && since + ms <= to)) return true;
   if (!everyMs) return false;
-  const turnsBefore = Math.max(0, Math.floor((from - raised) / everyMs));
-  const next = raised + (turnsBefore + 1) * everyMs;
+  const turnsBefore = Math.max(0, Math.floor((from - since) / everyMs));
+  const next = since + (turnsBefore + 1) * everyMs;
   return next > from && next <= to;
 }
 
-/** What an alert sounds like for a person in a stretch of time; null: it does not ring. */
-export const ringOf = (alert: AlertDto, personId: string, from: number, to: number): SoundName | null =>
-  concerns(alert, personId) && ringsBetween(alert, from, to) ? rules[alert.kind].sound : null;
+/**
+ * What an alert sounds like for a person at `to`; null: it does not ring.
+ * @param from till when it was heard on this device, epoch ms; null: never, so it rings however old it is
+ */
+export const ringOf = (alert: AlertDto, personId: string, from: number | null, to: number): SoundName | null => {
+  if (!isOpen(alert) || !concerns(alert, personId)) return null;
+  return from === null || ringsBetween(alert, from, to) ? rules[alert.kind].sound : null;
+};
 
 /** Of several at once the most urgent is heard. */
 export const mostUrgent = (sounds: readonly SoundName[]): SoundName | null =>

@@ -1,5 +1,6 @@
 import { queryOptions, useQuery } from '@tanstack/react-query';
 import type { AlertDto } from '@/shared/contract/alert';
+import { isOpen } from './alarm-rings';
 import { api } from './api';
 import { roots } from './query-keys';
 import { useSession } from './session';
@@ -14,8 +15,7 @@ export const alertsQuery = () =>
   });
 export const useAlerts = () => useQuery(alertsQuery());
 
-/** Neither taken nor over. */
-export const isOpen = (alert: AlertDto): boolean => alert.takenBy === null && alert.clearedAt === null;
+export { isOpen };
 
 /** Alerts that nobody has taken yet; for the badge. */
 export function useOpenAlertCount(): number {

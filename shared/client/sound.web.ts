@@ -42,6 +42,9 @@ export function switchSound(on: boolean): void {
   renew();
 }
 
+/** False while the browser waits for a tap before it plays: what rings now is not heard. */
+export const canRing = (): boolean => stateNow() !== 'muted';
+
 /** Plays a contour now, and the same as vibration. A muted or switched-off device only vibrates. */
 export function playSound(name: SoundName): void {
   const tones = contours[name];

@@ -37,9 +37,23 @@ describe('when an alert rings', () => {
     expect(rings(alert('overdue', { takenBy: { id: 'bram', name: 'Bram' } }))).toEqual([]);
     expect(rings(alert('overdue', { clearedAt: new Date(raised).toISOString() }))).toEqual([]);
   });
-  it('a finished charge and a look-in ring once', () => {
-    expect(rings(alert('charge-done'))).toEqual([0]);
-    expect(rings(alert('look-in-due'))).toEqual([0]);
+  it('a finished charge whose current waits for a hand rings at once, after 5 and after 15 min', () => {
+    expect(rings(alert('charge-done'))).toEqual([0, 300, 900]);
+    expect(rings(alert('charge-done', { takenBy: { id: 'bram', name: 'Bram' } }))).toEqual([]);
+  });
+  it('a finished charge that ends by itself and a look-in ring once', () => {
+    expect(rings(alert('charge-done', { level: 'tell' }))).toEqual([0]);
+    expect(rings(alert('look-in-due', { level: 'tell' }))).toEqual([0]);
+  });
+  it('passed on after 10 min it rings for the receiver from then, at 0, 5 and 15 min', () => {
+    const passed = { ...alert('check-due'), passedAt: new Date(raised + 600_000).toISOString() };
+    expect(rings(passed)).toEqual([600, 900, 1500]);
+  });
+  it('never heard on this device it rings however old it is, until it is taken', () => {
+    expect(ringOf(alert('charge-done'), 'ines', null, raised + 7_200_000)).toBe('ready');
+    expect(ringOf(alert('charge-done'), 'bram', null, raised + 7_200_000)).toBeNull();
+    const taken = alert('charge-done', { takenBy: { id: 'bram', name: 'Bram' } });
+    expect(ringOf(taken, 'ines', null, raised + 7_200_000)).toBeNull();
   });
   it('rings for its person and, as an alarm, for everybody', () => {
     expect(rings(alert('check-due'), 'bram')).toEqual([]);
