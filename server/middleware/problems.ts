@@ -14,7 +14,7 @@ const titles: Record<number, string> = {
   412: 'Changed meanwhile',
   413: 'Too large',
   415: 'Not understood',
-  422: 'Key used for something else',
+  422: 'Not possible as it is',
   428: 'Revision missing',
   429: 'Too many tries',
   503: 'Not ready',
@@ -36,7 +36,8 @@ function foreseen(error: unknown): DomainError | null {
   if (error instanceof URIError || status === 400)
     return new DomainError(400, 'bad_request', 'This address cannot be read.');
   const { code } = error as { code?: unknown };
-  if (code === 'SQLITE_BUSY' || code === 'SQLITE_FULL' || code === 'SQLITE_READONLY')
+  // With their extended forms: SQLITE_BUSY_SNAPSHOT, SQLITE_IOERR_WRITE.
+  if (typeof code === 'string' && /^SQLITE_(BUSY|LOCKED|FULL|READONLY|IOERR)(_|$)/.test(code))
     return new DomainError(503, 'database_busy', 'The database could not be written just now. Try again.', {
       retryAfterS: 2,
     });

@@ -6,6 +6,7 @@ import {
   resetSchema,
   signInSchema,
 } from '@/shared/contract/session';
+import { DomainError } from '../errors/domain-error';
 import { cookieOf } from '../middleware/cookies';
 import { frontDoor } from '../services/front-door.service';
 import { describeLink } from '../services/invitations.service';
@@ -61,7 +62,8 @@ export const sessionRoutes: RoutesModule = (route) => {
       try {
         return beginSession(response, await refreshSession(deps, cookieOf(request, 'bidewell_refresh'), now), now);
       } catch (error) {
-        forgetSession(response);
+        // A database that is busy for a moment ends nobody's session.
+        if (error instanceof DomainError && error.status === 401) forgetSession(response);
         throw error;
       }
     },

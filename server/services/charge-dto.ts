@@ -182,6 +182,7 @@ export async function chargeDto(
     expected: expectedOf(fresh),
     checks: sheet.items,
     startBlockedBy: isWaitingToStart(charge.stage) ? await startBlock(manager, file, sheet) : null,
+    planAgain: sheet.moved !== null,
     readings: byTime(file.readings).map((reading) => readingDto(file, reading, member)),
     restChecks: file.restChecks.map((check) => restCheckDto(file, check)),
     events: events.map((event) => eventDto(file, event)),
@@ -223,7 +224,8 @@ function expectedOf({ charge }: ChargeFile): ChargeDto['expected'] {
       };
 }
 
-const readingDto = (file: ChargeFile, reading: ChargeReading, member: Member): ReadingDto => ({
+/** A reading as its charge shows it. */
+export const readingDto = (file: ChargeFile, reading: ChargeReading, member: Member): ReadingDto => ({
   id: reading.id,
   at: toInstant(reading.at),
   terminalVolts: reading.terminalVolts,

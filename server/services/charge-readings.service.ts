@@ -5,7 +5,7 @@ import type { Deps, Member } from '../deps';
 import type { ChargeReading } from '../entities/charge-reading';
 import { conflict, forbidden, invalid, notFound } from '../errors/domain-error';
 import { insertReading, updateReading } from '../repositories/charge-rows.repository';
-import { mayCorrect } from './charge-dto';
+import { mayCorrect, readingDto } from './charge-dto';
 import { actInstant } from './charge-instants';
 import { isOpen, isUnderWay } from './charge-stages';
 import { wrongStage } from './charge-stage-conflict';
@@ -65,12 +65,14 @@ export function correctReading(
     const old = file.readings.find((one) => one.id === readingId);
     if (!old) throw notFound('This reading');
     if (!isOpen(charge.stage)) throw wrongStage(write, 'Its readings are closed.');
-    if (old.replacedById !== null)
+    if (old.replacedById !== null) {
+      const standing = file.readings.find((one) => one.id === old.replacedById);
       throw conflict(
         'corrected_already',
         'This reading was corrected already. Correct the one that stands in its place.',
-        file.readings.find((one) => one.id === old.replacedById),
+        standing && readingDto(file, standing, member),
       );
+    }
     if (!mayCorrect(file, old, member))
       throw forbidden(
         `${people.get(old.personId)?.name ?? 'Somebody else'} has written this reading. Its writer or a foreman corrects it.`,

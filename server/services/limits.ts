@@ -47,7 +47,7 @@ export interface Limits {
   count(name: LimitName, key: string): Promise<void>;
   /** Gives one counted try back. */
   giveBack(name: LimitName, key: string): Promise<void>;
-  /** Whether the next try would still be let through. */
+  /** Whether no further try would be let through. */
   spent(name: LimitName, key: string): Promise<boolean>;
   forget(name: LimitName, key: string): Promise<void>;
 }

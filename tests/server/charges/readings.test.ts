@@ -190,7 +190,9 @@ describe('a correction', () => {
     await correct(id, { amps: '10' });
     const again = await correct(id, { amps: '9' });
     expect(again.status).toBe(409);
-    expect(again.body).toMatchObject({ code: 'corrected_already', present: { amps: 10 } });
+    expect(again.body).toMatchObject({ code: 'corrected_already', present: { amps: 10, source: 'typed' } });
+    // As the charge shows it, not as it is stored.
+    expect((again.body as { present: object }).present).not.toHaveProperty('workshopId');
   });
 
   test('a reading of nowhere is 404', async () => {

@@ -1,6 +1,6 @@
 import { createHmac, generateKeyPairSync } from 'node:crypto';
 import jwt from 'jsonwebtoken';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { Session } from '@/server/entities/session';
 import { Person } from '@/server/entities/person';
 import { cookiesOf, Jar } from '@/tests/support/cookies';
@@ -201,6 +201,22 @@ describe('a session', () => {
     expect((await refresh()).status).toBe(200);
     expect(jar.get('bidewell_refresh')).toBe(second);
   });
+
+  it.each(['SQLITE_BUSY', 'SQLITE_BUSY_SNAPSHOT', 'SQLITE_IOERR_WRITE'])(
+    'outlives a database that cannot be written for a moment (%s): 503, and the cookies stay',
+    async (code) => {
+      await signIn();
+      const token = jar.get('bidewell_refresh');
+      vi.spyOn(server.deps.dataSource, 'transaction').mockRejectedValueOnce(
+        Object.assign(new Error('locked'), { code }),
+      );
+      const busy = await refresh();
+      expect([busy.status, busy.body.code]).toEqual([503, 'database_busy']);
+      expect(busy.headers['retry-after']).toBe('2');
+      expect(jar.get('bidewell_refresh')).toBe(token);
+      expect((await refresh()).status).toBe(200);
+    },
+  );
 
   it('survives two tabs that refresh at the same moment, with one successor for both', async () => {
     await signIn();
