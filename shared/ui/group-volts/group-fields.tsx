@@ -3,7 +3,9 @@ import { View } from 'react-native';
 import { Field } from '../primitives/field';
 import type { FieldVerdict } from '../primitives/field-frame';
 import { makeStyles } from '../theme/make-styles';
-import { spreadVolts, type GroupForm } from './group-form';
+import type { GroupForm } from './group-form';
+import { RefusedVolts } from './refused-paste';
+import { useGroupPaste } from './use-group-paste';
 import { usePastedVolts } from './use-pasted-volts';
 
 export interface GroupEntryProps {
@@ -26,18 +28,44 @@ export function GroupFields({
   columns: number;
 }) {
   const styles = useStyles();
+  const { refused, put, forget } = useGroupPaste(entry.form, entry.count);
   return (
-    <View style={styles.grid}>
-      {Array.from({ length: entry.count }, (_, group) => (
-        <View key={group} style={{ width: `${100 / columns}%`, paddingHorizontal: 4 }}>
-          <GroupField {...entry} group={group} />
-        </View>
-      ))}
+    <View style={styles.whole}>
+      <View style={styles.grid}>
+        {Array.from({ length: entry.count }, (_, group) => (
+          <View key={group} style={{ width: `${100 / columns}%`, paddingHorizontal: 4 }}>
+            <GroupField
+              {...entry}
+              group={group}
+              refused={refused?.group === group ? refused.sentence : null}
+              onPaste={(volts) => void put(group, volts)}
+              onTyped={forget}
+            />
+          </View>
+        ))}
+      </View>
+      {refused ? <RefusedVolts volts={refused.volts} /> : null}
     </View>
   );
 }
 
-function GroupField({ form, count, group, verdictOf, onLeave, onLast }: GroupEntryProps & { group: number }) {
+function GroupField({
+  form,
+  count,
+  group,
+  verdictOf,
+  onLeave,
+  onLast,
+  refused,
+  onPaste,
+  onTyped,
+}: GroupEntryProps & {
+  group: number;
+  /** Why the list that was pasted here was not taken. */
+  refused: string | null;
+  onPaste: (volts: string[]) => void;
+  onTyped: () => void;
+}) {
   const {
     field: { ref, value, onChange, onBlur },
     fieldState,
@@ -47,7 +75,8 @@ function GroupField({ form, count, group, verdictOf, onLeave, onLast }: GroupEnt
     if (!last) return form.setFocus(`groupVolts.${group + 1}`);
     onLast?.();
   };
-  const box = usePastedVolts((many) => spreadVolts(form, group, count, many));
+  const box = usePastedVolts(onPaste);
+  const error = refused ?? fieldState.error?.message;
   return (
     <View ref={box}>
       <Field
@@ -55,14 +84,17 @@ function GroupField({ form, count, group, verdictOf, onLeave, onLast }: GroupEnt
         kind="decimal"
         unit="V"
         value={value ?? ''}
-        onChangeText={onChange}
+        onChangeText={(text) => {
+          onTyped();
+          onChange(text);
+        }}
         onBlur={() => {
           onBlur();
           onLeave?.();
         }}
         ref={ref}
-        error={fieldState.error?.message}
-        verdict={fieldState.error ? undefined : (verdictOf?.(group) ?? undefined)}
+        error={error}
+        verdict={error ? undefined : (verdictOf?.(group) ?? undefined)}
         onSubmit={next}
         nextKey={last ? 'done' : 'next'}
       />
@@ -71,5 +103,6 @@ function GroupField({ form, count, group, verdictOf, onLeave, onLast }: GroupEnt
 }
 
 const useStyles = makeStyles(() => ({
+  whole: { rowGap: 8 },
   grid: { flexDirection: 'row', flexWrap: 'wrap', rowGap: 14, marginHorizontal: -4 },
 }));

@@ -1,5 +1,6 @@
 /** The voltages of a module's groups inside a form: what field and pad need of it. */
 import type { UseFormReturn } from 'react-hook-form';
+import { groupCountProblem } from '@/shared/contract/group-volts';
 
 /** Any form with a list of typed voltages named `groupVolts`. */
 export type GroupForm = Pick<
@@ -39,8 +40,16 @@ export function groupList(numbers: readonly number[]): string {
   return `${names.slice(0, 3).join(', ')} and ${names.length - 3} more`;
 }
 
-/** Puts a pasted list into the groups from one on, no further than there are. */
-export const spreadVolts = (form: GroupForm, from: number, count: number, values: readonly string[]): void =>
-  values
-    .slice(0, count - from)
-    .forEach((value, index) => form.setValue(`groupVolts.${from + index}`, value, { shouldDirty: true }));
+/** The sentence where so many voltages do not fit into the groups from one on (counted from 0); null: they fit. */
+export function pasteProblem(pasted: number, from: number, count: number): string | null {
+  const room = count - from;
+  if (pasted <= room) return null;
+  // A list no longer than the module overruns only because of where it was pasted.
+  return pasted <= count
+    ? `From group ${from + 1} on there is room for ${room}; ${pasted} voltages were pasted.`
+    : groupCountProblem(pasted, { groupsInSeries: count });
+}
+
+/** Puts a pasted list that fits into the groups from one on. */
+export const spreadVolts = (form: GroupForm, from: number, values: readonly string[]): void =>
+  values.forEach((value, index) => form.setValue(`groupVolts.${from + index}`, value, { shouldDirty: true }));

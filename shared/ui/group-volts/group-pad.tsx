@@ -10,8 +10,9 @@ import { makeStyles } from '../theme/make-styles';
 import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import type { GroupEntryProps } from './group-fields';
-import { spreadVolts } from './group-form';
 import { GroupStrip } from './group-strip';
+import { RefusedVolts } from './refused-paste';
+import { useGroupPaste } from './use-group-paste';
 import { usePastedVolts } from './use-pasted-volts';
 
 /**
@@ -31,7 +32,8 @@ export function GroupPad({ form, count, verdictOf, onLeave, onLast }: GroupEntry
   );
   const input = useRef<TextInput>(null);
   const value = values[present] ?? '';
-  const error = errors.groupVolts?.[present]?.message;
+  const paste = useGroupPaste(form, count);
+  const error = paste.refused?.sentence ?? errors.groupVolts?.[present]?.message;
   const verdict = error ? null : (verdictOf?.(present) ?? null);
 
   // On send the form goes to its first wrong field: the pad turns to that group.
@@ -47,14 +49,18 @@ export function GroupPad({ form, count, verdictOf, onLeave, onLast }: GroupEntry
     }
   }, [form, count]);
 
-  const put = (text: string) => form.setValue(`groupVolts.${present}`, text, { shouldDirty: true });
+  const put = (text: string) => {
+    paste.forget();
+    form.setValue(`groupVolts.${present}`, text, { shouldDirty: true });
+  };
   const box = usePastedVolts((many) => {
-    spreadVolts(form, present, count, many);
+    if (!paste.put(present, many)) return;
     setPresent(Math.min(count - 1, present + many.length));
   });
   const go = (group: number) => {
     if (value.trim() !== '') void form.trigger(`groupVolts.${present}`);
     onLeave?.();
+    paste.forget();
     if (group >= count) return onLast?.();
     setPresent(Math.max(0, group));
     input.current?.focus();
@@ -90,6 +96,7 @@ export function GroupPad({ form, count, verdictOf, onLeave, onLast }: GroupEntry
             {error ?? verdict?.text}
           </Txt>
         ) : null}
+        {paste.refused ? <RefusedVolts volts={paste.refused.volts} /> : null}
       </View>
       <View style={styles.walk}>
         <Button

@@ -1,23 +1,36 @@
 import { fireEvent, render, screen } from '@testing-library/react';
-import { useEffect } from 'react';
+import { useEffect, type ReactNode } from 'react';
 import { useForm } from 'react-hook-form';
 import { describe, expect, it } from 'vitest';
 import { FormatsProvider } from '@/shared/ui/format/formats';
+import { GroupFields, type GroupEntryProps } from '@/shared/ui/group-volts/group-fields';
 import { groupList, pastedVolts, type GroupForm } from '@/shared/ui/group-volts/group-form';
 import { GroupPad } from '@/shared/ui/group-volts/group-pad';
 
 const held: { form: GroupForm | null } = { form: null };
-function Pad({ count = 8, language = 'en-GB' }: { count?: number; language?: string }) {
+function Pad({
+  count = 8,
+  language = 'en-GB',
+  entry: Entry = GroupPad,
+}: {
+  count?: number;
+  language?: string;
+  entry?: (props: GroupEntryProps) => ReactNode;
+}) {
   const own = useForm({ defaultValues: { groupVolts: Array.from({ length: count }, () => '') } });
   useEffect(() => {
     held.form = own;
   }, [own]);
   return (
     <FormatsProvider languageTag={language} zone="UTC">
-      <GroupPad form={own} count={count} />
+      <Entry form={own} count={count} />
     </FormatsProvider>
   );
 }
+const Fields = ({ count }: { count: number }) => (
+  <Pad count={count} entry={(entry) => <GroupFields {...entry} columns={2} />} />
+);
+const paste = (field: HTMLElement, text: string) => fireEvent.paste(field, { clipboardData: { getData: () => text } });
 const values = () => held.form!.getValues('groupVolts');
 const press = (name: string) => fireEvent.click(screen.getByRole('button', { name }));
 const type = (keys: string) => [...keys].forEach((key) => press(key === '.' ? 'Decimal mark' : key));
@@ -51,13 +64,45 @@ describe('the group pad', () => {
     expect(screen.getByRole<HTMLInputElement>('textbox').value).toBe('3.896');
   });
 
-  it('spreads a pasted list over the groups from the present one on, and no further than there are', () => {
+  it('spreads a pasted list over the groups from the present one on', () => {
     render(<Pad count={7} />);
     press('Skip G1');
-    fireEvent.paste(screen.getByRole('textbox'), {
-      clipboardData: { getData: () => '3,896\n3,895\n3,894\n3,893\n3,892\n3,891\n3,890' },
-    });
+    paste(screen.getByRole('textbox'), '3,896\n3,895\n3,894\n3,893\n3,892\n3,891');
     expect(values()).toEqual(['', '3,896', '3,895', '3,894', '3,893', '3,892', '3,891']);
+  });
+
+  it('takes none of 7 voltages from the second of 7 groups on; says so and shows them till a key is pressed', () => {
+    render(<Pad count={7} />);
+    type('3.9');
+    press('On to G2');
+    paste(screen.getByRole('textbox'), '3,896\n3,895\n3,894\n3,893\n3,892\n3,891\n3,890');
+    expect(values()).toEqual(['3.9', '', '', '', '', '', '']);
+    expect(screen.getByText('From group 2 on there is room for 6; 7 voltages were pasted.')).toBeTruthy();
+    expect(screen.getByText(/3,896; 3,895; 3,894; 3,893; 3,892; 3,891; 3,890/)).toBeTruthy();
+    type('4');
+    expect(values()[1]).toBe('4');
+    expect(screen.queryByText(/were pasted|3,896/)).toBeNull();
+  });
+});
+
+describe('the fields of the groups', () => {
+  it('take a list that fits', () => {
+    render(<Fields count={2} />);
+    paste(screen.getByLabelText('Group 1'), '3.968 3.966');
+    expect(values()).toEqual(['3.968', '3.966']);
+  });
+
+  it('take none of 4 voltages for 2 groups: what was typed stays, the field says how many there are, the 4 stay in sight', () => {
+    render(<Fields count={2} />);
+    fireEvent.change(screen.getByLabelText('Group 1'), { target: { value: '3.9' } });
+    paste(screen.getByLabelText('Group 1'), '3.968 3.966 3.961 3.960');
+    expect(values()).toEqual(['3.9', '']);
+    const field = screen.getByLabelText(/^Group 1/);
+    expect(field.getAttribute('aria-invalid')).toBe('true');
+    expect(screen.getByText('This type has 2 groups; 4 voltages were typed.')).toBeTruthy();
+    expect(screen.getByText(/3\.968; 3\.966; 3\.961; 3\.960/)).toBeTruthy();
+    fireEvent.change(field, { target: { value: '3.968' } });
+    expect(screen.queryByText(/4 voltages/)).toBeNull();
   });
 });
 
