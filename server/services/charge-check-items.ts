@@ -52,11 +52,13 @@ export const isolationWords = (): CheckWords =>
     no: 'Not yet',
   });
 
-/** What the meter must show between the clips of the first step. */
-export function polarityWords(file: ChargeFile): CheckWords {
+/**
+ * What the meter must show between the clips of the first step.
+ * @param volts of the groups by the newest reading, V
+ */
+export function polarityWords(file: ChargeFile, volts: readonly number[]): CheckWords {
   const { charge } = file;
   const step = charge.option.steps[0];
-  const volts = charge.frozen.spare.groupVolts;
   const moved = (step?.groupIndexes ?? []).map((group) => volts[group] ?? 0);
   const sum = moved.reduce((total, one) => total + one, 0);
   const paralleled = step?.way === 'paralleled';

@@ -1,6 +1,6 @@
 import type { EntityManager } from 'typeorm';
 import { refuseCharge } from '@/calc/plan/refuse-charge';
-import type { Refusal } from '@/calc/plan-types';
+import type { Refusal, SpareState } from '@/calc/plan-types';
 import { checkCodes, type CheckCode, type CheckItemDto } from '@/shared/contract/charge';
 import type { CheckAnswer } from '../entities/check-answer';
 import type { SpareReading } from '../entities/spare-reading';
@@ -23,6 +23,7 @@ import { isWaitingToStart } from './charge-stages';
 import { celsiusText, clockText } from './charge-words';
 import { toInstant } from './instants';
 import { spareState } from './plan-parameters';
+import { readsOtherwise } from './reads-otherwise';
 
 export interface CheckSheet {
   items: CheckItemDto[];
@@ -30,6 +31,8 @@ export interface CheckSheet {
   refusals: Refusal[];
   /** The reading the locked answers come from. */
   reading: SpareReading | null;
+  /** Sentence where the spare no longer reads what it was planned with; null: it does. */
+  moved: string | null;
 }
 
 /** Which check shows what the numbers rule out. */
@@ -60,7 +63,10 @@ export async function checkSheet(
   );
   const waiting = isWaitingToStart(file.charge.stage);
   const reading = await findLastSpareReading(manager, file.charge.workshopId, file.charge.spareId);
-  const refusals = waiting && reading !== null ? presentRefusals(file, reading, now) : [];
+  const state = waiting && reading !== null ? readState(file, reading, now) : null;
+  const refusals = state === null ? [] : presentRefusals(file, state);
+  // Up to the start the meter is held against what it showed last; afterwards the plan's numbers stand.
+  const groupVolts = state?.groupVolts ?? file.charge.frozen.spare.groupVolts;
   const words = (code: CheckCode): CheckWords => {
     const answer = present.get(code);
     if (!waiting && code === 'temperature' && answer?.note)
@@ -68,12 +74,13 @@ export async function checkSheet(
     const refusal = refusals.find((one) => checkOfRefusal[one.code] === code);
     if (refusal && code !== 'temperature')
       return locked('ruled-out', code, refusal.text, 'Ruled out by the numbers. Locked.');
-    return wordsOf(file, code, reading, waiting, now);
+    return wordsOf(file, code, groupVolts, reading, waiting, now);
   };
   return {
     items: checkCodes.map((code) => itemOf(file, code, words(code), present.get(code) ?? null)),
     refusals,
     reading,
+    moved: state === null || reading === null ? null : movedSince(file, reading, state),
   };
 }
 
@@ -90,11 +97,19 @@ function itemOf(file: ChargeFile, code: CheckCode, words: CheckWords, answer: Ch
   };
 }
 
+/** The spare as its last reading has it, that meter's known offset taken off. */
+const readState = ({ spare, type, meters }: ChargeFile, reading: SpareReading, now: number): SpareState =>
+  spareState(spare, type, reading, meters.get(reading.meterId ?? '') ?? null, now);
+
+/** A reading newer than the plan's that says something else than the plan was made from. */
+const movedSince = ({ charge }: ChargeFile, reading: SpareReading, state: SpareState): string | null =>
+  reading.at > charge.frozen.spareReadAt
+    ? readsOtherwise('It', charge.frozen.spare.groupVolts, state.groupVolts, charge.toleranceVolts)
+    : null;
+
 /** What the spare's present state and its last reading rule out, with the limits the charge was planned with. */
-function presentRefusals(file: ChargeFile, reading: SpareReading, now: number): Refusal[] {
-  const { charge, spare, type, meters } = file;
-  const { frozen } = charge;
-  const state = spareState(spare, type, reading, meters.get(reading.meterId ?? '') ?? null, now);
+function presentRefusals(file: ChargeFile, state: SpareState): Refusal[] {
+  const { frozen } = file.charge;
   const { minChargeCelsius: least, maxChargeCelsius: most } = frozen.module;
   const found = refuseCharge({
     module: frozen.module,
@@ -143,6 +158,7 @@ function ceilingRefusals({ charge, channels }: ChargeFile): Refusal[] {
 function wordsOf(
   file: ChargeFile,
   code: CheckCode,
+  groupVolts: readonly number[],
   reading: SpareReading | null,
   waiting: boolean,
   now: number,
@@ -151,7 +167,7 @@ function wordsOf(
     case 'isolation':
       return isolationWords();
     case 'polarity':
-      return polarityWords(file);
+      return polarityWords(file, groupVolts);
     case 'condition':
       return conditionWords();
     case 'temperature':
@@ -166,13 +182,10 @@ function wordsOf(
 }
 
 function temperatureOf(file: ChargeFile, reading: SpareReading | null, waiting: boolean, now: number): CheckWords {
-  const { charge, workshop, spare, type, meters } = file;
+  const { charge, workshop } = file;
   const { minChargeCelsius: least, maxChargeCelsius: most } = charge.frozen.module;
   const window = `${Math.round(least)}–${celsiusText(most)}`;
-  const celsius =
-    reading === null || !waiting
-      ? null
-      : spareState(spare, type, reading, meters.get(reading.meterId ?? '') ?? null, now).celsius;
+  const celsius = reading === null || !waiting ? null : readState(file, reading, now).celsius;
   if (celsius === null || reading === null) return temperatureWords(window);
   const says = `${celsiusText(celsius)}, allowed ${window}`;
   const at = clockText(reading.at, workshop.zone, now);
@@ -189,13 +202,17 @@ function temperatureOf(file: ChargeFile, reading: SpareReading | null, waiting: 
 }
 
 /** Sentence that keeps the timer from starting because of the checks; null: all of them let it start. */
-export function sheetBlock(sheet: CheckSheet): { code: 'ruled_out' | 'checks_open'; text: string } | null {
+export function sheetBlock(
+  sheet: CheckSheet,
+): { code: 'ruled_out' | 'spare_moved' | 'checks_open'; text: string } | null {
   const out = sheet.items.find((item) => item.by === 'ruled-out');
   if (out) {
     const refusal = sheet.refusals.find((one) => checkOfRefusal[one.code] === out.code);
     const why = refusal?.text ?? `${titleOfCheck(out.code)}: ${out.question}.`;
-    return { code: 'ruled_out', text: `${why} That cannot be ticked away.` };
+    const then = out.code === 'temperature' ? ' Then read it again.' : '';
+    return { code: 'ruled_out', text: `${why}${then} That cannot be ticked away.` };
   }
+  if (sheet.moved !== null) return { code: 'spare_moved', text: sheet.moved };
   const denied = sheet.items.find((item) => item.answer === 'no');
   if (denied)
     return {

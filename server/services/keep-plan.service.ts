@@ -7,10 +7,16 @@ import type { ChannelHold } from '../entities/channel-hold';
 import type { Charge } from '../entities/charge';
 import { conflict, DomainError, invalid, notFound } from '../errors/domain-error';
 import { insertHolds } from '../repositories/charge-rows.repository';
-import { findOpenChargeOfSpare, insertCharge, nextChargeNumber } from '../repositories/charges.repository';
-import { chargeDto } from './charge-dto';
+import {
+  deleteCharge,
+  findCharge,
+  findOpenChargeOfSpare,
+  insertCharge,
+  nextChargeNumber,
+} from '../repositories/charges.repository';
+import { chargeCard, chargeDto } from './charge-dto';
 import { loadFile, type ChargeFile } from './charge-file';
-import { isUnderWay } from './charge-stages';
+import { isUnderWay, isWaitingToStart } from './charge-stages';
 import { clockText, durationText, titleOf } from './charge-words';
 import { announce, settle, type Announcement } from './charge-write';
 import { newId } from './ids';
@@ -23,26 +29,33 @@ import { lastChange, toldBy } from './who-changed';
  * Keeps one option of a plan as a charge. The plan is made again from what is known now; where the option is not among
  * its ways any more, nothing is kept and the new plan comes back.
  *
- * With `topUpOf` the charge that is topped up is closed first: its spare goes on in the new one.
+ * With `topUpOf` the charge that is topped up is closed first: its spare goes on in the new one. With `insteadOf` the
+ * charge that was planned from older numbers is dropped, in the same transaction: the spare is never without a plan.
  * @throws DomainError 409 the option is gone, the spare has an open charge; 422 the numbers rule it out
  */
 export async function keepPlan(deps: Deps, member: Member, request: KeepPlanRequest, now: number): Promise<ChargeDto> {
   const kept = inTransaction(deps, async (manager) => {
     const done: Announcement[] = [];
     const toppedUp = request.topUpOf ? await toppedUpFile(manager, member, request, request.topUpOf) : null;
-    await refuseTakenSpare(manager, member, request.spareId, toppedUp, now);
+    const replaced = request.insteadOf ? await replacedFile(manager, member, request, request.insteadOf, now) : null;
+    await refuseTakenSpare(manager, member, request.spareId, toppedUp ?? replaced, now);
     const planned = await planFor(manager, member.workshopId, request, now);
     const option = optionOf(planned.dto, request.optionId);
     const number = `C-${String(await nextChargeNumber(manager, member.workshopId)).padStart(4, '0')}`;
     const charge = chargeRow(member, request, planned, option, number, now);
     if (toppedUp !== null) done.push(await closeForTopUp(manager, member, toppedUp, number, now));
+    // What was to be topped up is still what this one goes on from.
+    charge.topUpOf ??= replaced?.charge.topUpOf ?? null;
+    if (replaced !== null) await deleteCharge(manager, member.workshopId, replaced.charge.id);
     await insertCharge(manager, charge);
     await insertHolds(manager, holdRows(charge));
     const file = await loadFile(manager, member.workshopId, charge.id);
-    const text =
-      toppedUp === null ? keptText(file, now) : `${keptText(file, now)} It tops up ${toppedUp.charge.number}.`;
+    const from = toppedUp ? ` It tops up ${toppedUp.charge.number}.` : '';
+    const instead = replaced ? ` In place of ${replaced.charge.number}.` : '';
+    const text = `${keptText(file, now)}${from}${instead}`;
     const kept = await settle(manager, file, now, [{ at: now, kind: 'planned', personId: member.personId, text }]);
     done.push({ ...kept, stock: true, channels: true });
+    if (replaced !== null) done.push({ ...kept, charge: replaced.charge, alerts: { raised: [], changed: [] } });
     return { dto: await chargeDto(manager, deps.config, file, member, now), announcements: done };
   });
   const { dto, announcements } = await refusingTaken(kept);
@@ -69,15 +82,33 @@ async function toppedUpFile(
   return file;
 }
 
+/** The charge to be planned anew; null where somebody has dropped it already. */
+async function replacedFile(
+  manager: EntityManager,
+  member: Member,
+  request: KeepPlanRequest,
+  id: string,
+  now: number,
+): Promise<ChargeFile | null> {
+  if ((await findCharge(manager, member.workshopId, id)) === null) return null;
+  const file = await loadFile(manager, member.workshopId, id);
+  if (file.charge.spareId !== request.spareId)
+    throw invalid({ spareId: `${file.charge.number} is of another spare. It is planned again with the same one.` });
+  if (isWaitingToStart(file.charge.stage)) return file;
+  const begun = `${titleOf(file.charge)} is begun meanwhile. Go on with it, or stop it first.`;
+  const last = await lastChange(manager, file, member, now, ['started']);
+  throw toldBy(conflict('wrong_stage', begun, chargeCard(file, now)), last);
+}
+
 async function refuseTakenSpare(
   manager: EntityManager,
   member: Member,
   spareId: string,
-  toppedUp: ChargeFile | null,
+  goesOn: ChargeFile | null,
   now: number,
 ): Promise<void> {
   const open = await findOpenChargeOfSpare(manager, member.workshopId, spareId);
-  if (open === null || open.id === toppedUp?.charge.id) return;
+  if (open === null || open.id === goesOn?.charge.id) return;
   const taken = conflict(
     'spare_taken',
     `This spare is on ${titleOf(open)} already. Take another spare, or go on with that charge.`,

@@ -1,14 +1,17 @@
 import type { EntityManager } from 'typeorm';
 import type { Member } from '../deps';
+import type { Spare } from '../entities/spare';
 import { conflict, type DomainError } from '../errors/domain-error';
 import { runningHoldsOn } from '../repositories/charge-rows.repository';
 import { chargeNames, findOpenChargeOfSpare } from '../repositories/charges.repository';
 import { lastMoveOf } from '../repositories/spare-moves.repository';
-import { findSpare } from '../repositories/spares.repository';
+import { findLastSpareReading, findSpare } from '../repositories/spares.repository';
 import { sheetBlock, type CheckSheet } from './charge-checks';
 import { loadFile, type ChargeFile } from './charge-file';
 import { stepsOfSwap } from './charge-steps';
 import { titleOf } from './charge-words';
+import { correctedVolts } from './meter-trust';
+import { readsOtherwise } from './reads-otherwise';
 import { lastChange, toldBy } from './who-changed';
 
 export interface ChannelHolder {
@@ -66,7 +69,8 @@ export async function startBlock(manager: EntityManager, file: ChargeFile, sheet
  * Sentence why the spare that a resistor joins to this one is not what it was planned with; null: it is, or none is
  * joined.
  */
-export async function neighbourBlock(manager: EntityManager, { charge }: ChargeFile): Promise<string | null> {
+export async function neighbourBlock(manager: EntityManager, file: ChargeFile): Promise<string | null> {
+  const { charge } = file;
   const { workshopId, neighbourSpareId } = charge;
   if (neighbourSpareId === null) return null;
   const neighbour = await findSpare(manager, workshopId, neighbourSpareId);
@@ -79,5 +83,18 @@ export async function neighbourBlock(manager: EntityManager, { charge }: ChargeF
   const moved = await lastMoveOf(manager, workshopId, neighbourSpareId);
   return moved && moved.until > charge.createdAt
     ? `${name} has been moved by ${titleOf(moved.charge)} since this was planned. ${instead}`
-    : null;
+    : neighbourReads(manager, file, neighbour);
+}
+
+/** The same where the joined spare was read since the plan, and reads something else. */
+async function neighbourReads(
+  manager: EntityManager,
+  { charge, meters }: ChargeFile,
+  neighbour: Spare,
+): Promise<string | null> {
+  const planned = charge.frozen.neighbour;
+  const reading = await findLastSpareReading(manager, charge.workshopId, neighbour.id);
+  if (planned === null || reading === null || reading.createdAt <= charge.createdAt) return null;
+  const volts = correctedVolts(reading.groupVolts, meters.get(reading.meterId ?? '') ?? null);
+  return readsOtherwise(neighbour.label, planned.groupVolts, volts, charge.toleranceVolts);
 }

@@ -259,6 +259,8 @@ export interface ChargeDto extends ChargeCardDto {
   checks: CheckItemDto[];
   /** Sentence why the timer cannot be started yet; null: it can. */
   startBlockedBy: string | null;
+  /** Its spare no longer reads what it was planned with: only a new plan lets it start. */
+  planAgain: boolean;
   readings: ReadingDto[];
   restChecks: RestCheckDto[];
   events: ChargeEventDto[];

@@ -56,5 +56,7 @@ export const keepPlanSchema = z.object({
   optionId: z.string().check(z.minLength(1), z.maxLength(200)),
   /** The charge that this one tops up: it is closed, its spare goes on in the new one. */
   topUpOf: z.optional(z.nullable(id)),
+  /** The charge of the same spare, not begun, that this one is planned in place of: it is dropped. */
+  insteadOf: z.optional(z.nullable(id)),
 });
 export type KeepPlanRequest = z.infer<typeof keepPlanSchema>;

@@ -2,8 +2,11 @@ import { useLocalSearchParams } from 'expo-router';
 import { useMemo, useState } from 'react';
 import { emptyPlan, type PlanTyped } from '@/shared/ui/plan/plan-typed';
 
-/** What the address brings along: a spare from the stock, or everything of a top-up. Read once; what is typed then counts. */
-export function useAddress(): { topUpOf: string | null; initial: PlanTyped } {
+/**
+ * What the address brings along: a spare from the stock, or everything of a top-up or of a plan made again. Read once;
+ * what is typed then counts.
+ */
+export function useAddress(): { topUpOf: string | null; insteadOf: string | null; initial: PlanTyped } {
   const params = useLocalSearchParams();
   const [address] = useState(params);
   return useMemo(() => {
@@ -13,6 +16,7 @@ export function useAddress(): { topUpOf: string | null; initial: PlanTyped } {
     };
     return {
       topUpOf: text('topUpOf') || null,
+      insteadOf: text('insteadOf') || null,
       initial: {
         ...emptyPlan,
         spareId: text('spare'),

@@ -6,7 +6,7 @@ import { useToast } from '@/shared/ui/primitives/toast';
 import type { PlanPage } from './use-plan-page';
 
 /** Keeps the chosen way as a charge: for the checks now, or for later, then in the queue where a time is typed. */
-export function useKeep({ topUpOf, request, chosen, plan, tryAll, setOpen, clearDraft }: PlanPage) {
+export function useKeep({ topUpOf, insteadOf, request, chosen, plan, tryAll, setOpen, clearDraft }: PlanPage) {
   const router = useRouter();
   const toast = useToast();
   const keep = useKeepPlan();
@@ -15,11 +15,13 @@ export function useKeep({ topUpOf, request, chosen, plan, tryAll, setOpen, clear
   const send = async (then: 'checks' | 'later') => {
     tryAll();
     if (!request || !chosen) return setOpen(true);
-    const charge = await keep.mutateAsync({ ...request, optionId: chosen.id, topUpOf }).catch((error: unknown) => {
-      // The channel or the spare was taken meanwhile: the ways are reckoned anew, what is typed stays.
-      if (isConflict(error) || (isProblem(error) && error.status === 422)) void plan.refetch();
-      return null;
-    });
+    const charge = await keep
+      .mutateAsync({ ...request, optionId: chosen.id, topUpOf, insteadOf })
+      .catch((error: unknown) => {
+        // The channel or the spare was taken meanwhile: the ways are reckoned anew, what is typed stays.
+        if (isConflict(error) || (isProblem(error) && error.status === 422)) void plan.refetch();
+        return null;
+      });
     if (charge === null) return;
     clearDraft();
     if (then === 'checks') return router.replace(`/charges/${charge.id}/checks` as Href);

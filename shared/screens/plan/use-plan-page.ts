@@ -20,8 +20,8 @@ const settleMs = 400;
 
 /** What the page of a plan knows: what is typed, what was reckoned from it, and which way is chosen. */
 export function usePlanPage() {
-  const { topUpOf, initial } = useAddress();
-  const draft = useDraft(`plan.${topUpOf ?? initial.spareId}`, initial);
+  const { topUpOf, insteadOf, initial } = useAddress();
+  const draft = useDraft(`plan.${topUpOf ?? insteadOf ?? initial.spareId}`, initial);
   const typed = draft.value;
   const { zone } = useFormats();
   const now = useNow(30_000);
@@ -55,6 +55,8 @@ export function usePlanPage() {
 
   return {
     topUpOf,
+    /** The charge this plan is made in place of, while it is of the same spare. */
+    insteadOf: typed.spareId === initial.spareId ? insteadOf : null,
     typed,
     now,
     today,

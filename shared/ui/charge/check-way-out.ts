@@ -1,4 +1,4 @@
-/** What to do where the numbers rule a charge out, or its channel is taken. Pure. */
+/** What to do where the numbers rule a charge out, its spare has moved, or its channel is taken. Pure. */
 import type { ChargeDto, CheckCode } from '@/shared/contract/charge';
 import { otherSparePath, replanPath } from './top-up';
 
@@ -14,7 +14,7 @@ const byCode: Partial<Record<CheckCode, 'read-again' | 'other-spare' | 'replan'>
   ceiling: 'replan',
 };
 
-/** The way on from what is ruled out or taken; null: nothing stands in the way but answers to come. */
+/** The way on from what is ruled out, moved or taken; null: nothing stands in the way but answers to come. */
 export function wayOut(charge: ChargeDto): WayOut | null {
   const out = charge.checks.find((item) => item.by === 'ruled-out');
   if (out) {
@@ -24,6 +24,7 @@ export function wayOut(charge: ChargeDto): WayOut | null {
       ? { kind: 'plan', title: 'Take another spare', path: otherSparePath(charge) }
       : { kind: 'plan', title: 'Plan another way', path: replanPath(charge) };
   }
+  if (charge.planAgain) return { kind: 'plan', title: 'Plan it again', path: replanPath(charge) };
   const allYes = charge.checks.every((item) => item.answer === 'yes');
   return allYes && charge.startBlockedBy !== null
     ? { kind: 'plan', title: 'Plan another way', path: replanPath(charge) }

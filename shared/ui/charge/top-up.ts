@@ -25,8 +25,9 @@ const targetOf = (charge: ChargeDto): Known => ({
 export const topUpPath = (charge: ChargeDto): string =>
   planPath({ spare: charge.spare.id, topUpOf: charge.id, ...targetOf(charge) });
 
-/** The same spare on another channel or way. */
-export const replanPath = (charge: ChargeDto): string => planPath({ spare: charge.spare.id, ...targetOf(charge) });
+/** The same spare from what it reads now, or on another channel or way: in place of this charge, which is not begun. */
+export const replanPath = (charge: ChargeDto): string =>
+  planPath({ spare: charge.spare.id, insteadOf: charge.id, ...targetOf(charge) });
 
 /** Another spare to the same target. */
 export const otherSparePath = (charge: ChargeDto): string => planPath(targetOf(charge));

@@ -109,12 +109,23 @@ describe('the checks before clipping on', () => {
     expect(url.pathname).toBe('/plan');
     expect(Object.fromEntries(url.searchParams)).toEqual({
       spare: 's1',
+      insteadOf: 'c1',
       target: '3.906',
       repair: 'R-2411',
       meter: 'm1',
       celsius: '21',
       tolerance: '5',
     });
+  });
+
+  it('lead to a new plan in place of this one where the spare reads something else, before anything is answered', async () => {
+    serverWith(queued({}, { startBlockedBy: 'It reads 3.900 V now. Plan it again.', planAgain: true }));
+    draw(<Checks />);
+    const start = await press('Clip on and start the timer');
+    expect(reasonOf(start)).toBe('It reads 3.900 V now. Plan it again.');
+    fireEvent.click(await press('Plan it again'));
+    const [path] = vi.mocked(router.push).mock.calls[0]!;
+    expect(String(path)).toMatch(/^\/plan\?spare=s1&insteadOf=c1&target=3\.906&/);
   });
 
   it('start with the revision that was seen; where somebody was quicker the sentence and the present state come', async () => {

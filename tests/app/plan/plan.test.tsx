@@ -1,4 +1,4 @@
-import { fireEvent, screen, waitFor } from '@testing-library/react';
+import { cleanup, fireEvent, screen, waitFor } from '@testing-library/react';
 import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Plan from '@/app/(workshop)/plan';
@@ -10,9 +10,10 @@ import { pressFrom } from '../../support/press';
 import { draw, emptyDevice, input, meters, press, problem } from '../charges/bench-of';
 import { fakeServer } from '../workshop/server';
 
+const address = vi.hoisted(() => ({ params: { spare: 's1' } as Record<string, string> }));
 vi.mock('expo-router', async (original) => ({
   ...(await original<object>()),
-  useLocalSearchParams: () => ({ spare: 's1' }),
+  useLocalSearchParams: () => address.params,
 }));
 
 const spare = {
@@ -119,5 +120,20 @@ describe('planning a charge', () => {
     expect(router.push).toHaveBeenCalledWith('/charges/c3');
     expect((await input('Pack rests at')).value).toBe('3.92');
     expect(await press('Checks before clipping on')).toBeTruthy();
+  });
+
+  it('made again from a charge keeps the new one in place of it', async () => {
+    cleanup();
+    address.params = { spare: 's1', insteadOf: 'c1', target: '3.92', tolerance: '5' };
+    try {
+      server.answers['POST /api/charges'] = () => Response.json({ id: 'c7', number: 'C-0007', rev: 1 });
+      draw(<Plan />);
+      await reckoned();
+      fireEvent.click(checks());
+      await waitFor(() => expect(router.replace).toHaveBeenCalledWith('/charges/c7/checks'));
+      expect(kept()[0]!.body).toMatchObject({ spareId: 's1', targetVolts: 3.92, insteadOf: 'c1' });
+    } finally {
+      address.params = { spare: 's1' };
+    }
   });
 });

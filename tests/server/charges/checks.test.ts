@@ -60,6 +60,14 @@ describe('the checks before clipping on', () => {
     expect(refused.status).toBe(422);
     expect(refused.body).toMatchObject({ code: 'ruled_out' });
     expect((await seen(bench, charge.id)).stage).toBe('planned');
+    expect(cold.startBlockedBy).toContain('Warm it to 10\u00a0°C first. Then read it again.');
+    bench.server.clock.advance(3 * hour);
+    await bench
+      .as('technician')
+      .post(`/api/spares/${spareId}/readings`, { groupVolts: [3.802, 3.803], celsius: 15, meterId: null });
+    const warm = await seen(bench, charge.id);
+    expect(item(warm, 'temperature')).toMatchObject({ by: 'data', question: '15\u00a0°C, allowed 10–45\u00a0°C' });
+    expect((await did(bench, warm, 'start')).stage).toBe('charging');
   });
 
   test('a reading of the day before does not answer for today: a person is asked', async () => {

@@ -106,16 +106,83 @@ describe('keeping a plan', () => {
     expect((answer.body as { detail: string }).detail).toContain('2.410');
   });
 
-  test('later changes of the spare do not touch a charge that exists', async () => {
+  test('a later reading within ±5 mV does not touch a charge that exists', async () => {
     const spareId = await bench.spare('S-0001');
-    const charge = await kept(bench, { spareId });
-    await bench
-      .as('technician')
-      .post(`/api/spares/${spareId}/readings`, { groupVolts: [3.5, 3.5], celsius: 21, meterId: bench.meterId })
-      .expect((answer) => expect(answer.status).toBeLessThan(300));
+    const charge = await answered(bench, await kept(bench, { spareId }));
+    await read(spareId, [3.807, 3.797]);
     const now = await seen(bench, charge.id);
     expect(now.option).toEqual(charge.option);
     expect(now.groups.map((group) => group.volts)).toEqual([3.802, 3.802]);
+    expect(now).toMatchObject({ startBlockedBy: null, planAgain: false });
+    expect((await did(bench, now, 'start')).stage).toBe('charging');
+  });
+});
+
+const read = async (spareId: string, groupVolts: number[]) => {
+  bench.server.clock.advance(minute);
+  await bench
+    .as('technician')
+    .post(`/api/spares/${spareId}/readings`, { groupVolts, celsius: 21, meterId: bench.meterId })
+    .expect(201);
+};
+
+describe('a spare that reads something else than it was planned with', () => {
+  test('3.900 V in place of 3.802 V: the timer is not started, and the meter is asked for 7.800 V', async () => {
+    const spareId = await bench.spare('S-0001');
+    const charge = await answered(bench, await kept(bench, { spareId }));
+    expect(charge.startBlockedBy).toBeNull();
+    await read(spareId, [3.9, 3.9]);
+    const moved = await seen(bench, charge.id);
+    expect(moved).toMatchObject({ startBlockedBy: 'It reads 3.900\u00a0V now. Plan it again.', planAgain: true });
+    expect(moved.checks.find((item) => item.code === 'polarity')!.yes).toBe('Red on plus, 7.800\u00a0V');
+    const refused = await act(bench, moved, 'start');
+    expect(refused.status).toBe(422);
+    expect(refused.body).toMatchObject({ code: 'spare_moved', detail: 'It reads 3.900\u00a0V now. Plan it again.' });
+    expect((await seen(bench, charge.id)).stage).toBe('planned');
+  });
+
+  test('one group by 6 mV is enough, and is named; said before anything has to be answered', async () => {
+    const spareId = await bench.spare('S-0001');
+    const charge = await kept(bench, { spareId });
+    await read(spareId, [3.802, 3.808]);
+    expect((await seen(bench, charge.id)).startBlockedBy).toBe('Group 2 reads 3.808\u00a0V now. Plan it again.');
+  });
+
+  test('read back to what it was, it may start', async () => {
+    const spareId = await bench.spare('S-0001');
+    const charge = await answered(bench, await kept(bench, { spareId }));
+    await read(spareId, [3.9, 3.9]);
+    await read(spareId, [3.803, 3.802]);
+    expect(await seen(bench, charge.id)).toMatchObject({ startBlockedBy: null, planAgain: false });
+  });
+
+  test('it is planned again in place of the old plan, which is dropped, from the 3.900 V', async () => {
+    const spareId = await bench.spare('S-0001');
+    const old = await kept(bench, { spareId });
+    await read(spareId, [3.9, 3.9]);
+    const option = await planned(bench, { spareId });
+    expect((await keep(spareId, option.id)).body).toMatchObject({ code: 'spare_taken' });
+    const answer = await keep(spareId, option.id, { insteadOf: old.id });
+    expect(answer.status, JSON.stringify(answer.body)).toBe(201);
+    const charge = answer.body as ChargeDto;
+    expect(charge.groups.map((group) => group.volts)).toEqual([3.9, 3.9]);
+    expect(charge.option.ampHours).toBeLessThan(old.option.ampHours);
+    expect(charge.events[0]!.text).toMatch(/ In place of C-0001\.$/);
+    await bench.as('technician').get(`/api/charges/${old.id}`).expect(404);
+    expect((await did(bench, await answered(bench, charge), 'start')).stage).toBe('charging');
+  });
+
+  test('a plan that was begun meanwhile is not replaced, nor one of another spare', async () => {
+    const spareId = await bench.spare('S-0001');
+    const other = await bench.spare('S-0002');
+    const option = await planned(bench, { spareId });
+    const begun = await running(bench, { spareId });
+    const refused = await keep(spareId, option.id, { insteadOf: begun.id });
+    expect(refused.status).toBe(409);
+    expect(refused.body).toMatchObject({ code: 'wrong_stage', present: { stage: 'charging' } });
+    const wrong = await keep(other, option.id, { insteadOf: begun.id });
+    expect(wrong.status).toBe(400);
+    expect((await seen(bench, begun.id)).stage).toBe('charging');
   });
 });
 

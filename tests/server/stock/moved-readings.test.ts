@@ -154,3 +154,17 @@ test('a resistor is not put on where its neighbour is no longer what it was plan
     .expect(200);
   expect((await act(bench, charge, 'start')).body).toMatchObject({ detail: 'S-0002 is set aside. Plan another way.' });
 });
+
+test('nor where its neighbour was read since and has moved by more than ±5 mV', async () => {
+  const { neighbourId, charge } = await joined();
+  await read(neighbourId, [3.991, 3.999]).expect(201);
+  expect((await seen(bench, charge.id)).startBlockedBy).toBeNull();
+  bench.server.clock.advance(minute);
+  await read(neighbourId, [3.995, 3.86]).expect(201);
+  const refused = await act(bench, charge, 'start');
+  expect(refused.status).toBe(409);
+  expect(refused.body).toMatchObject({
+    code: 'neighbour_gone',
+    detail: 'S-0002, group 2, reads 3.860\u00a0V now. Plan it again.',
+  });
+});

@@ -92,6 +92,7 @@ export function charge(stage: Stage, more: Partial<ChargeDto> = {}): ChargeDto {
     expected: { at: iso('13:36'), terminalVolts: 11.65, amps: 10, celsius: 23 },
     checks: [],
     startBlockedBy: null,
+    planAgain: false,
     readings: [],
     restChecks: [],
     events: [],
