@@ -23,6 +23,7 @@ import { useBreakpoint } from '../theme/use-breakpoint';
 import { judgeTyped, type CheckValues } from './check-form';
 import { CheckHead } from './check-head';
 import { verdictWords } from './check-words';
+import { Emergency } from './emergency';
 import { useNextStep, type NextStepPlaces } from './next-step-box';
 import { MeterSelect } from './read-again-sheet';
 import { TopUpCallOut } from './top-up-call-out';
@@ -103,6 +104,7 @@ export function CheckScreen(props: CheckScreenProps) {
             {all && outside && capacityAh !== null ? (
               <TopUpCallOut groups={verdicts.filter((one) => one !== null)} topUp={null} ruledOut={null} />
             ) : null}
+            <Emergency charge={charge} chemistry={chemistry} />
             <StandingLine />
             {next.side}
           </View>

@@ -1,6 +1,6 @@
 import { lazy, Suspense } from 'react';
 import { View } from 'react-native';
-import type { ModuleTypeDto } from '@/shared/contract/equipment';
+import type { ChargeDto } from '@/shared/contract/charge';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { Link } from '../primitives/link';
@@ -50,7 +50,7 @@ export function LiveWork(props: LiveScreenProps) {
       <WhileOffline {...props} />
       <Asks {...props} />
       <Outcome {...props} />
-      {isUnderWay(charge) ? <Emergency chemistry={props.type && fireName[props.type.chemistry]} /> : null}
+      {isOver(charge) ? null : <Emergency charge={charge} chemistry={props.type?.chemistry ?? null} />}
       {wide || proven ? null : (
         <>
           <Rule gap={4} />
@@ -67,14 +67,8 @@ export function LiveWork(props: LiveScreenProps) {
   );
 }
 
-/** What the fire service needs to know of it. */
-const fireName: Record<ModuleTypeDto['chemistry'], string> = {
-  nmc: 'lithium-ion, NMC',
-  'lmo-blend': 'lithium-ion, LMO blend',
-  lfp: 'lithium-ion, LFP',
-  lto: 'lithium-ion, LTO',
-  nimh: 'nickel metal hydride',
-};
+/** The module is in the pack or on the shelf. A stopped one still lies on the bench. */
+const isOver = ({ stage }: ChargeDto): boolean => stage === 'fitted' || stage === 'shelved';
 
 /** All readings, with the way to put one right. */
 export const LiveReadings = ({ charge, at, onGo }: LiveScreenProps) => (

@@ -34,6 +34,14 @@ beforeEach(() => {
 afterEach(() => vi.unstubAllGlobals());
 
 describe('the check after the rest', () => {
+  it('has what to do at smoke one tap away', async () => {
+    serverWith(due);
+    draw(<Check />);
+    fireEvent.click(await press('Smoke, smell or swelling now'));
+    expect(await screen.findByText(/stop the charge here afterwards/)).toBeTruthy();
+    expect(await screen.findByText(/lithium-ion, NMC/)).toBeTruthy();
+  });
+
   it('judges each group as it is typed and keeps the text, comma and all', async () => {
     serverWith(due);
     draw(<Check />);

@@ -37,6 +37,14 @@ beforeEach(() => {
 afterEach(() => vi.unstubAllGlobals());
 
 describe('the checks before clipping on', () => {
+  it('has what to do at smoke one tap away', async () => {
+    serverWith(queued());
+    draw(<Checks />);
+    fireEvent.click(await press('Smoke, smell or swelling now'));
+    expect(await screen.findByText(/do not clip it on, and keep away/)).toBeTruthy();
+    expect(await screen.findByText(/lithium-ion, NMC/)).toBeTruthy();
+  });
+
   it('show one open at a time, nothing of it chosen, and the timer cannot be started: the reason stands at the button', async () => {
     serverWith(queued());
     draw(<Checks />);

@@ -95,7 +95,33 @@ describe('a running charge', () => {
     expect(steps[0]).toMatch(/Get everybody out.*Do not touch or move the module/);
     expect(steps.findIndex((step) => /fire service/.test(step ?? ''))).toBeGreaterThan(0);
     await waitFor(() => expect(sheet.getByText(/lithium-ion, NMC/)).toBeTruthy());
+    expect(sheet.getByText(/keep away, and stop the charge here afterwards/)).toBeTruthy();
   });
+
+  it.each([
+    ['queued', /do not clip it on, and keep away\. Put S-0398 into quarantine afterwards/],
+    ['check-due', /keep away, and stop the charge here afterwards/],
+    ['ready', /do not fit it, and keep away\. Shelve it here afterwards/],
+    ['stopped', /Put S-0398 into quarantine afterwards, where that was not done with the stop/],
+  ] as const)('%s, it still says what to do at smoke, by what can be done then', async (stage, words) => {
+    serverWith(charge(stage, mine));
+    draw(<Live />);
+    fireEvent.click(await press('Smoke, smell or swelling now'));
+    const sheet = within(await screen.findByRole('dialog'));
+    expect(sheet.getByText(words)).toBeTruthy();
+    const off = sheet.getAllByRole('listitem')[2]!.textContent;
+    expect(/^3If it is still or already clipped on/.test(off ?? '')).toBe(stage !== 'check-due');
+  });
+
+  it.each(['fitted', 'shelved'] as const)(
+    '%s, it is not on the bench any more and says nothing of smoke',
+    async (stage) => {
+      serverWith(charge(stage, mine));
+      draw(<Live />);
+      await screen.findAllByText(/S-0398/);
+      expect(screen.queryByRole('button', { name: 'Smoke, smell or swelling now' })).toBeNull();
+    },
+  );
 
   it('is handed over by who has it, not by a technician from a colleague', async () => {
     serverWith(charge('charging', mine));

@@ -1,5 +1,6 @@
 import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
 import { useState } from 'react';
+import { View } from 'react-native';
 import { isConflict, isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { actProblem } from '@/shared/client/charge-acts';
 import { useAnswerCheck, useCharge, useStartCharge } from '@/shared/client/charges';
@@ -7,6 +8,7 @@ import { useNow } from '@/shared/client/clock';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
+import { useModuleType } from '@/shared/client/module-types';
 import { useAddSpareReading } from '@/shared/client/spares';
 import type { ChargeDto, CheckCode } from '@/shared/contract/charge';
 import { spareReadingSchemaFor } from '@/shared/contract/spare';
@@ -15,6 +17,7 @@ import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
 import { useCheckFoot } from '@/shared/ui/charge/check-foot';
 import { CheckList } from '@/shared/ui/charge/check-list';
 import type { CheckValues } from '@/shared/ui/charge/check-form';
+import { Emergency } from '@/shared/ui/charge/emergency';
 import { useNextStep } from '@/shared/ui/charge/next-step-box';
 import { ReadAgainSheet } from '@/shared/ui/charge/read-again-sheet';
 import { WhatToSet } from '@/shared/ui/charge/what-to-set';
@@ -66,6 +69,7 @@ function Sheet({
   const toast = useToast();
   const { zone, marks } = useFormats();
   const offline = useLink().state === 'down';
+  const type = useModuleType(charge.moduleTypeId).data;
   const answer = useAnswerCheck();
   const start = useStartCharge();
   const [changing, setChanging] = useState<CheckCode | null>(null);
@@ -143,6 +147,9 @@ function Sheet({
         side={
           <>
             <WhatToSet charge={charge} now={now} />
+            <View style={{ marginTop: 16 }}>
+              <Emergency charge={charge} chemistry={type?.chemistry ?? null} />
+            </View>
             <StandingLine style={{ marginTop: 16 }} />
             {next.side}
           </>
