@@ -58,10 +58,10 @@ export async function checkSheet(
   answers: readonly CheckAnswer[],
   now: number,
 ): Promise<CheckSheet> {
-  const present = new Map(
-    answers.filter((answer) => answer.replacedAt === null).map((answer) => [answer.code, answer]),
-  );
   const waiting = isWaitingToStart(file.charge.stage);
+  const last = new Map(answers.filter((answer) => answer.replacedAt === null).map((answer) => [answer.code, answer]));
+  const stale = (code: CheckCode): boolean => waiting && isStale(last.get(code), now);
+  const present = new Map([...last].filter(([code]) => !stale(code)));
   const reading = await findLastSpareReading(manager, file.charge.workshopId, file.charge.spareId);
   const state = waiting && reading !== null ? readState(file, reading, now) : null;
   const refusals = state === null ? [] : presentRefusals(file, state);
@@ -74,7 +74,8 @@ export async function checkSheet(
     const refusal = refusals.find((one) => checkOfRefusal[one.code] === code);
     if (refusal && code !== 'temperature')
       return locked('ruled-out', code, refusal.text, 'Ruled out by the numbers. Locked.');
-    return wordsOf(file, code, groupVolts, reading, waiting, now);
+    const asked = wordsOf(file, code, groupVolts, reading, waiting, now);
+    return stale(code) && asked.by === 'person' ? askedAgain(asked, file, last.get(code)!, now) : asked;
   };
   return {
     items: checkCodes.map((code) => itemOf(file, code, words(code), present.get(code) ?? null)),
@@ -82,6 +83,27 @@ export async function checkSheet(
     reading,
     moved: state === null || reading === null ? null : movedSince(file, reading, state),
   };
+}
+
+/** Answers that tell how things stood; the others tell what was set, and stay. */
+const passing: ReadonlySet<CheckCode> = new Set([
+  'isolation',
+  'polarity',
+  'condition',
+  'temperature',
+  'attendance',
+] satisfies CheckCode[]);
+/** A shift: who answered then is gone, and what was seen may be otherwise by now, ms. Common practice. */
+const ANSWER_GOOD_MS = 12 * 3_600_000;
+
+const isStale = (answer: CheckAnswer | undefined, now: number): boolean =>
+  answer !== undefined && passing.has(answer.code) && now - answer.at > ANSWER_GOOD_MS;
+
+/** The question once more, with why. The old answer stays with the charge. */
+function askedAgain(words: CheckWords, { people, workshop }: ChargeFile, answer: CheckAnswer, now: number): CheckWords {
+  const who = people.get(answer.personId)?.name ?? 'Somebody';
+  const when = clockText(answer.at, workshop.zone, now);
+  return { ...words, detail: `${words.detail} ${who} answered ${when}, over 12\u00a0h ago: look again.` };
 }
 
 function itemOf(file: ChargeFile, code: CheckCode, words: CheckWords, answer: CheckAnswer | null): CheckItemDto {

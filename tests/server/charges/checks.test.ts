@@ -80,6 +80,36 @@ describe('the checks before clipping on', () => {
     });
   });
 
+  test('what was answered over 12 h ago is asked again, but set voltage and fan; the old answers stay in the history', async () => {
+    const charge = await answered(bench, await kept(bench, { spareId: await bench.spare('S-0417') }));
+    bench.server.clock.advance(12 * hour - 60_000);
+    expect((await seen(bench, charge.id)).startBlockedBy).toBeNull();
+    bench.server.clock.advance(2 * 60_000);
+    const later = await seen(bench, charge.id);
+    expect(later.checks.filter((one) => one.answer === null).map((one) => one.code)).toEqual([
+      'isolation',
+      'polarity',
+      'condition',
+      'temperature',
+      'attendance',
+    ]);
+    expect(item(later, 'condition')).toMatchObject({ by: 'person', answeredBy: null, answeredAt: null });
+    expect(item(later, 'condition').detail).toMatch(/ answered 10:00, over 12\u00a0h ago: look again\.$/);
+    expect((await act(bench, later, 'start')).body).toMatchObject({ code: 'checks_open' });
+    const again = await answered(bench, later);
+    expect(again.startBlockedBy).toBeNull();
+    expect(item(again, 'condition').detail).not.toContain('look again');
+    const said = again.events.filter((event) => event.text.startsWith('Condition'));
+    expect(said.map((event) => event.text)).toEqual([
+      'Condition: no swelling, leak or dent.',
+      'Condition: no swelling, leak or dent.',
+    ]);
+    const started = await did(bench, again, 'start');
+    bench.server.clock.advance(13 * hour);
+    const after = await seen(bench, started.id);
+    expect(after.checks.every((one) => one.answer === 'yes')).toBe(true);
+  });
+
   test('polarity names the volts the meter must show: 3.612 V and 3.606 V make 7.218 V', async () => {
     const charge = await kept(bench, { spareId: await bench.spare('S-0417', [3.612, 3.606]) });
     expect(item(charge, 'polarity').yes).toBe('Red on plus, 7.218\u00a0V');
