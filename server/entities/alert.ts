@@ -56,6 +56,10 @@ export class Alert {
   @Column(optionalInstantColumn('taken_at'))
   takenAt!: number | null;
 
+  /** When it was last passed on to whom it is for now. */
+  @Column(optionalInstantColumn('passed_at'))
+  passedAt!: number | null;
+
   @Column(optionalInstantColumn('cleared_at'))
   clearedAt!: number | null;
 }

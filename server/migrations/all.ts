@@ -1,5 +1,6 @@
 /** All migrations in their order, listed: globs break in a bundle. */
 import { Initial1764600000000 } from './1764600000000-initial';
 import { NeighbourSpare1764700000000 } from './1764700000000-neighbour-spare';
+import { AlertPassed1764800000000 } from './1764800000000-alert-passed';
 
-export const migrations = [Initial1764600000000, NeighbourSpare1764700000000];
+export const migrations = [Initial1764600000000, NeighbourSpare1764700000000, AlertPassed1764800000000];

@@ -22,5 +22,6 @@ export const alertDto = (alert: Alert, people: ReadonlyMap<string, PersonName>):
   lateByS: alert.lateByS,
   takenBy: personRef(people, alert.takenById),
   takenAt: toOptionalInstant(alert.takenAt),
+  passedAt: toOptionalInstant(alert.passedAt),
   clearedAt: toOptionalInstant(alert.clearedAt),
 });

@@ -45,18 +45,29 @@ export function takeAlert(deps: Deps, member: Member, id: string, now: number): 
   });
 }
 
-/** Passes an alert to a colleague, who has not taken it yet. @throws DomainError 409 where its cause is gone */
-export function passAlert(deps: Deps, member: Member, id: string, personId: string, now: number): Promise<AlertDto> {
-  return changeAlert(deps, member, id, now, (alert, people) => {
+/**
+ * Passes an alert to a colleague, who has not taken it yet and hears it anew.
+ * @throws DomainError 409 where its cause is gone
+ */
+export async function passAlert(
+  deps: Deps,
+  member: Member,
+  id: string,
+  personId: string,
+  now: number,
+): Promise<AlertDto> {
+  const passed = await changeAlert(deps, member, id, now, (alert, people) => {
     refuseCleared(alert, people);
     const other = people.get(personId);
     if (!other) throw notFound('This person');
     if (other.disabledAt !== null) throw invalid({ personId: `${other.name} is disabled. Choose somebody else.` });
     return {
-      patch: { personId, takenById: null, takenAt: null },
+      patch: { personId, takenById: null, takenAt: null, passedAt: now },
       text: `${member.name} passed it to ${other.name}: ${titleText(alert)}`,
     };
   });
+  deps.hub.toPerson(member.workshopId, personId, 'alert:raised', passed);
+  return passed;
 }
 
 const titleText = (alert: Alert): string => lower(alert.seen);

@@ -144,6 +144,7 @@ function newAlert(file: ChargeFile, want: Wanted, cause: string, now: number, du
     lateByS,
     takenById: null,
     takenAt: null,
+    passedAt: null,
     clearedAt: null,
   };
 }

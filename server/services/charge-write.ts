@@ -34,6 +34,8 @@ export interface ChargeWrite {
   now: number;
   /** Writes a line into the log of the charge. */
   note: (kind: string, text: string, at?: number) => void;
+  /** Alerts that have gone over to somebody else, to be told to that person. */
+  passed: Alert[];
 }
 
 /** What is announced after the commit. */
@@ -42,6 +44,8 @@ export interface Announcement {
   boardRev: number;
   charge: Pick<Charge, 'id' | 'rev'>;
   alerts: AlertChanges;
+  /** Alerts that are somebody else's from now. */
+  passed?: Alert[];
   /** Where the spare stands has changed; who holds which channel has. */
   stock: boolean;
   channels: boolean;
@@ -73,6 +77,7 @@ export async function changeCharge(
       member,
       now,
       note: (kind, text, at = now) => notes.push({ at, kind, personId: member.personId, text }),
+      passed: [],
     };
     try {
       await act(write);
@@ -82,7 +87,10 @@ export async function changeCharge(
     }
     file.charge.rev += 1;
     const done = await settle(manager, file, now, notes);
-    return { dto: await chargeDto(manager, deps.config, file, member, now), announcement: done };
+    return {
+      dto: await chargeDto(manager, deps.config, file, member, now),
+      announcement: { ...done, passed: write.passed },
+    };
   });
   const { dto, announcement } = await refusingTaken(changed);
   announce(deps, announcement, now);
@@ -198,6 +206,12 @@ export function announce(deps: Pick<Deps, 'hub' | 'sleeper'>, done: Announcement
   if (done.channels) deps.hub.toWorkshop(workshopId, 'equipment:changed', { at });
   for (const alert of alerts.raised)
     deps.hub.toWorkshop(workshopId, 'alert:raised', alertDto(alert as Alert, done.people));
+  for (const alert of done.passed ?? []) {
+    // What the same act has settled is nobody's to hear any more.
+    if (alert.personId === null || alerts.changed.includes(alert.id)) continue;
+    deps.hub.toPerson(workshopId, alert.personId, 'alert:raised', alertDto(alert, done.people));
+    deps.hub.toWorkshop(workshopId, 'alert:changed', { id: alert.id, at });
+  }
   for (const id of alerts.changed) deps.hub.toWorkshop(workshopId, 'alert:changed', { id, at });
   deps.sleeper.poke();
 }

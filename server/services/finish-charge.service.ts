@@ -182,10 +182,14 @@ export function handOver(
   });
 }
 
-async function passAlerts({ manager, file }: ChargeWrite): Promise<void> {
+/** Open alerts go along; whoever gets them from somebody else hears them from now. */
+async function passAlerts({ manager, file, member, now, passed }: ChargeWrite): Promise<void> {
   const { charge } = file;
+  const passedAt = charge.personId === member.personId ? null : now;
   for (const alert of await alertsOfCharge(manager, charge.workshopId, charge.id)) {
-    if (alert.clearedAt !== null || alert.takenAt !== null) continue;
-    await updateAlert(manager, charge.workshopId, alert.id, { personId: charge.personId });
+    if (alert.clearedAt !== null || alert.takenAt !== null || alert.personId === charge.personId) continue;
+    const patch = { personId: charge.personId, passedAt };
+    await updateAlert(manager, charge.workshopId, alert.id, patch);
+    if (passedAt !== null) passed.push({ ...alert, ...patch });
   }
 }

@@ -19,6 +19,8 @@ export interface AlertDto {
   lateByS: number;
   takenBy: PersonRef | null;
   takenAt: Instant | null;
+  /** When it was passed on to whom it is for now: for that person it rings from then. Null: it was never passed on. */
+  passedAt: Instant | null;
   /** The cause is gone. */
   clearedAt: Instant | null;
 }

@@ -164,6 +164,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     lateByS: 0,
     takenById: null,
     takenAt: null,
+    passedAt: null,
     clearedAt: null,
   };
   await server.deps.dataSource.manager.insert(Alert, alert);

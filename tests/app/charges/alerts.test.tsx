@@ -19,6 +19,7 @@ const alert = (more: Partial<AlertDto> = {}): AlertDto => ({
   lateByS: 0,
   takenBy: null,
   takenAt: null,
+  passedAt: null,
   clearedAt: null,
   ...more,
 });

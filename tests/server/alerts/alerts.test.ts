@@ -169,6 +169,40 @@ describe('who has it', () => {
     ).toBe(404);
   });
 
+  const toldTo = (personId: string): AlertDto[] =>
+    bench.server.hub.told
+      .filter((one) => one.event === 'alert:raised' && one.personId === personId)
+      .map((one) => one.payload as AlertDto);
+
+  test('passed on after 10 min it rings for the other alone, from then', async () => {
+    await checkDue();
+    const [alert] = await open();
+    expect(alert!.passedAt).toBeNull();
+    bench.server.clock.advance(10 * minute);
+    const now = bench.server.clock.now();
+    await bench.as('technician').post(`/api/alerts/${alert!.id}/pass`, { personId: 'own-foreman' }).expect(200);
+    expect(toldTo('own-foreman')).toMatchObject([
+      { id: alert!.id, for: { id: 'own-foreman' }, takenBy: null, raisedAt: alert!.raisedAt },
+    ]);
+    expect(at(toldTo('own-foreman')[0]!.passedAt)).toBe(now);
+    expect((await open())[0]!.passedAt).toBe(new Date(now).toISOString());
+    expect(toldTo('own-technician')).toEqual([]);
+  });
+
+  test('a charge handed over with an open alert rings once for whom it was given to, from then', async () => {
+    const charge = await checkDue();
+    const [alert] = await open();
+    bench.server.clock.advance(3 * minute);
+    const now = bench.server.clock.now() + 1;
+    await did(bench, await seen(bench, charge.id), 'hand-over', { personId: 'own-foreman' });
+    expect(toldTo('own-foreman')).toMatchObject([{ id: alert!.id, for: { id: 'own-foreman' } }]);
+    expect(at(toldTo('own-foreman')[0]!.passedAt)).toBe(now);
+    expect((bench.server.hub.of('alert:changed') as { id: string }[]).map((one) => one.id)).toContain(alert!.id);
+    const again = await seen(bench, charge.id);
+    await did(bench, again, 'hand-over', { personId: 'own-foreman' }, 'foreman');
+    expect(toldTo('own-foreman')).toHaveLength(1);
+  });
+
   test('nobody of another workshop takes it, or hears of it', async () => {
     await checkDue();
     const [alert] = await open();

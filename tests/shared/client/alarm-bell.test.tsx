@@ -44,6 +44,7 @@ const alert = (more: Partial<AlertDto> & { passedAt?: string } = {}): AlertDto =
   lateByS: 0,
   takenBy: null,
   takenAt: null,
+  passedAt: null,
   clearedAt: null,
   ...more,
 });

@@ -17,6 +17,7 @@ const alert = (kind: AlertKind, more: Partial<AlertDto> = {}): AlertDto => ({
   lateByS: 0,
   takenBy: null,
   takenAt: null,
+  passedAt: null,
   clearedAt: null,
   ...more,
 });
