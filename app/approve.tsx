@@ -3,6 +3,7 @@ import { isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useNow } from '@/shared/client/clock';
 import { useContractForm, useFormField } from '@/shared/client/forms';
 import { useGate } from '@/shared/client/gate';
+import { missingHere } from '@/shared/client/secure-context';
 import { useMember } from '@/shared/client/session';
 import { useApproveWall, useRefuseWall, useWallRequest } from '@/shared/client/walls';
 import { readQuantity } from '@/shared/contract/quantity';
@@ -139,6 +140,7 @@ function ApproveForm({ onBack }: { onBack: () => void }) {
               : undefined
           }
         />
+        <CameraNote />
         {request.isError && !none ? <ProblemLine text={sentenceOf(request.error)} /> : null}
         {found ? (
           <Txt tone="ink2">
@@ -163,4 +165,14 @@ function ApproveForm({ onBack }: { onBack: () => void }) {
       </FormStack>
     </Screen>
   );
+}
+
+/** Why this page scans no code, where a browser refuses it the camera. */
+function CameraNote() {
+  const [missing] = missingHere(['camera']);
+  return missing ? (
+    <Txt kind="small" tone="ink2">
+      {missing.sentence}
+    </Txt>
+  ) : null;
 }

@@ -150,7 +150,9 @@ function Device() {
   const sound = useSoundState();
   const { permission, ask, test } = useNotices();
   const [tested, setTested] = useState<'shown' | 'not-shown' | null>(null);
-  const missing = missingHere(['notifications', 'service-worker', 'wake-lock']).map(({ sentence }) => sentence);
+  const missing = missingHere(['notifications', 'camera', 'service-worker', 'wake-lock']).map(
+    ({ sentence }) => sentence,
+  );
   return (
     <DeviceSettings
       theme={theme}

@@ -9,14 +9,16 @@ export interface MissingFeature {
 const overHttp: Record<Feature, string> = {
   'wake-lock': 'This screen may fall asleep: a browser keeps it awake only over https.',
   notifications: 'Notices outside this page are off: a browser shows them only over https.',
-  camera: 'Scanning is off: a browser opens the camera only over https. Type the label instead.',
+  camera:
+    'The camera is off in this page: a browser opens it only over https. Type the code, or scan it with the device’s own camera app.',
   'service-worker': 'Opening without a connection is off: a browser keeps the app only over https.',
 };
 const notHere: Record<Feature, string> = {
   'wake-lock':
     'This screen may fall asleep: this browser cannot keep it awake. Switch the sleep timer off in the device.',
   notifications: 'Notices outside this page are off: this browser has none.',
-  camera: 'Scanning is off: this browser opens no camera. Type the label instead.',
+  camera:
+    'The camera is off in this page: this browser opens none. Type the code, or scan it with the device’s own camera app.',
   'service-worker': 'Opening without a connection is off: this browser cannot keep the app.',
 };
 

@@ -3,6 +3,7 @@ import { useMemo, useState } from 'react';
 import { View } from 'react-native';
 import { isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useCharge } from '@/shared/client/charges';
+import { missingHere } from '@/shared/client/secure-context';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
 import { useFormats } from '@/shared/ui/format/formats';
@@ -63,6 +64,7 @@ export default function Label() {
 function Preview({ charge }: { charge: ChargeDto }) {
   const { zone, marks } = useFormats();
   const [width, setWidth] = useState(0);
+  const [missing] = missingHere(['camera']);
   const label = useMemo(() => labelOf(charge, zone, marks), [charge, zone, marks]);
   return (
     <View style={{ rowGap: 12, paddingTop: 8 }}>
@@ -72,6 +74,11 @@ function Preview({ charge }: { charge: ChargeDto }) {
       <Txt kind="small" tone="ink2">
         The code opens this charge. In the print sheet choose the label printer, 62 × 40 mm, without margins.
       </Txt>
+      {missing ? (
+        <Txt kind="small" tone="ink2">
+          {`${missing.sentence} ${charge.spare.label} finds it in Spares.`}
+        </Txt>
+      ) : null}
       <PrintSheet widthMm={labelSize.width} heightMm={labelSize.height}>
         <LabelSheet label={label} url={charge.labelUrl} width="62mm" />
       </PrintSheet>
