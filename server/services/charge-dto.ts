@@ -188,15 +188,12 @@ export async function chargeDto(
     events: events.map((event) => eventDto(file, event)),
     dominant: reckoning?.dominant ?? charge.option.dominant,
     createdAt: toInstant(charge.createdAt),
-    labelUrl: `${config.publicUrl ?? localUrl(config)}/charges/${charge.id}`,
+    labelUrl: `${(config.publicUrl ?? '').replace(/\/+$/, '')}/charges/${charge.id}`,
   };
 }
 
 const byTime = (readings: readonly ChargeReading[]): ChargeReading[] =>
   [...readings].sort((one, other) => one.at - other.at || one.createdAt - other.createdAt);
-
-const localUrl = (config: Config): string =>
-  `${config.tls === null ? 'http' : 'https'}://${config.host === '0.0.0.0' ? 'localhost' : config.host}:${config.port}`;
 
 const link = (charge: ChargeName | null): ChargeDto['topUpOf'] =>
   charge === null ? null : { id: charge.id, number: charge.number };

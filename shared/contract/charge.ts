@@ -266,6 +266,9 @@ export interface ChargeDto extends ChargeCardDto {
   events: ChargeEventDto[];
   dominant: string | null;
   createdAt: Instant;
-  /** Address the label's QR shows. */
+  /**
+   * Address the label's QR shows. Without an origin where the operator has set none: the server cannot know under which
+   * of this machine's names people open it, the page does.
+   */
   labelUrl: string;
 }

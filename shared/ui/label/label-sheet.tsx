@@ -11,12 +11,12 @@ const ink = 'black';
 /**
  * The label as one drawing in millimetres: on screen as wide as its place, on paper 62 × 40 mm.
  *
- * @param url what the QR code opens
+ * @param url what the QR code opens; without an origin it is under the address of this page
  * @param width '62mm' on paper
  */
 export function LabelSheet({ label, url, width }: { label: LabelInput; url: string; width: number | string }) {
   const layout = useMemo(() => layoutLabel(label), [label]);
-  const code = useMemo(() => qrPath(url), [url]);
+  const code = useMemo(() => qrPath(new URL(url, window.location.origin).href), [url]);
   const { rule, qr, mark, texts } = layout;
   const height = typeof width === 'number' ? (width * labelSize.height) / labelSize.width : `${labelSize.height}mm`;
   return (
