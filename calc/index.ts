@@ -12,6 +12,7 @@ export { setVoltageCap, type SetVoltageCap } from './set-voltage-cap';
 export { chemistryParameters, guessedLongResistance } from './chemistry';
 export { CHEMISTRIES, type ChemistryParameters } from './parameters/chemistries';
 export { longResistance, splitLongResistance } from './resistance/long-resistance';
+export { pulseTimeConstant, type PulseResistance } from './resistance/pulse-time-constant';
 export { resistanceTemperatureFactor } from './resistance/temperature-factor';
 export { temperatureVolts } from './parameters/temperature-coefficient';
 export { quantile, quantileOfSorted } from './statistics/quantile';

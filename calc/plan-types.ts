@@ -31,6 +31,8 @@ export interface ModuleParameters {
   /** Per group, ohm; null: the chemistry's guess scaled by capacity. */
   resistanceOhm: number | null;
   resistanceKind: ResistanceKind;
+  /** Of the over-voltage that builds up, s, where it was read (pulseTimeConstant); null or left out: the chemistry's guess. */
+  polarisationTimeConstantS?: number | null;
   linkResistanceOhm: number;
   /** The workshop's own curve; null: the chemistry's. */
   curve: OcvTable | null;

@@ -78,7 +78,7 @@ export function planModel(input: PlanInput): PlanModel {
     groups: startVolts.map((restVolts, group) => ({
       capacityAh: capacityAh[group]!,
       ...splitLongResistance(longOhm[group]!),
-      polarisationTimeConstantS: chemistry.polarisationTimeConstantS,
+      polarisationTimeConstantS: module.polarisationTimeConstantS ?? chemistry.polarisationTimeConstantS,
       restVolts,
     })),
     startSoc,
