@@ -19,6 +19,7 @@ export { quantile, quantileOfSorted } from './statistics/quantile';
 export { seededRandom } from './statistics/seeded-random';
 export { latinHypercube, latinHypercubeNormal, shuffled } from './statistics/latin-hypercube';
 export { inverseNormal } from './statistics/inverse-normal';
+export { predictRest, type RestForecast, type RestOptions, type RestReading } from './rest/predict-rest';
 
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
