@@ -20,6 +20,18 @@ export { seededRandom } from './statistics/seeded-random';
 export { latinHypercube, latinHypercubeNormal, shuffled } from './statistics/latin-hypercube';
 export { inverseNormal } from './statistics/inverse-normal';
 export { predictRest, type RestForecast, type RestOptions, type RestReading } from './rest/predict-rest';
+export { combineFigures, type CombinedFigure, type Figure } from './learn/figure';
+export {
+  capacityFromTwoReadings,
+  type GroupCapacity,
+  type TwoReadings,
+  type TwoReadingsCapacity,
+} from './learn/two-readings';
+export {
+  resistanceFromReadings,
+  type ResistanceFound,
+  type ResistanceReadings,
+} from './learn/resistance-from-readings';
 
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
