@@ -32,9 +32,11 @@ export {
   type ResistanceFound,
   type ResistanceReadings,
 } from './learn/resistance-from-readings';
+export { learnedFactor, type ClosedCharge, type LearnedFactor } from './learn/learned-factor';
 
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
+export { withTimeFactor } from './plan/time-factor';
 export { judgeCheck } from './plan/judge-check';
 export { reckonCharge } from './live/reckon-charge';
 export { quickEstimate, type QuickEstimate, type QuickNumbers, type QuickWay } from './plan/estimate';

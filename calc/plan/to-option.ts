@@ -7,6 +7,7 @@ import { dominantDoubt } from './doubt-shares';
 import type { Draft, DraftStep } from './draft';
 import { minimumRestS } from './minimum-rest';
 import type { PlanModel } from './plan-model';
+import { timeFactorOf, timeFactorText, withTimeFactor } from './time-factor';
 import { toTrace } from './to-trace';
 import { ampsText } from './words';
 
@@ -26,7 +27,9 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
   };
   clockInput.restS = Math.max(clockInput.restS, settleAfterEnd(steps, layOut(clockInput)));
   const clock = layOut(clockInput);
-  const sampled = model.samples.map((sample) => steps.map((step) => step.secondsIn(sample)));
+  const reckoned = model.samples.map((sample) => steps.map((step) => step.secondsIn(sample)));
+  const factor = timeFactorOf(input, steps);
+  const sampled = factor === null ? reckoned : withTimeFactor(reckoned, factor);
   const ready = sampled.map((seconds) => layOut({ ...clockInput, seconds }).readyS);
   const totalS: Band = { p10: quantile(ready, 0.1), p50: quantile(ready, 0.5), p90: quantile(ready, 0.9) };
   const doubt = dominantDoubt(model.samples, ready);
@@ -66,6 +69,7 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
     dominant: doubt.dominant,
     narrowsByS: doubt.narrowsByS,
     cautions: [],
+    ...(factor === null ? {} : { timeFactor: factor, timeFactorText: timeFactorText(factor) }),
   };
   option.cautions = optionCautions(model, draft, option);
   return option;
