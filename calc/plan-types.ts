@@ -56,8 +56,15 @@ export interface SpareState {
 }
 
 export interface TargetState {
-  /** Rest voltage per group, V. */
+  /** Rest voltage per group, V; does not count where `soc` is given. */
   volts: number;
+  /**
+   * The pack's state of charge, 0…1, typed or from its own counter, in place of the volts: where voltage says little of it
+   * (LFP and NiMH on their plateau), the charge is then counted from full or empty.
+   */
+  soc?: number | null;
+  /** Standard deviation of `soc`; default 0.02, a guess. */
+  socSd?: number | null;
   toleranceVolts: number;
   meterId: string | null;
   celsius: number | null;
@@ -153,6 +160,11 @@ export interface PlanInput {
   spreads?: Partial<Spreads>;
   /** Learned of this module type, for channels without one of their own; null or left out: none. */
   timeFactor?: TimeFactor | null;
+  /**
+   * Whether a person takes the wide band of a voltage target on the plateau of LFP or NiMH. False: such a plan is refused,
+   * with the band it would have. Left out: it is offered with its cautions.
+   */
+  acceptWideBand?: boolean;
 }
 
 /** How far each number may be off: one standard deviation, unless said otherwise. */
@@ -308,6 +320,10 @@ export interface PlanOption {
   /** How many seconds the 10–90 % band would narrow were the dominant number known. */
   narrowsByS: number;
   cautions: Caution[];
+  /** Charged to full (or discharged to empty) first and counted from there; left out: by voltage. */
+  knownEnd?: 'full' | 'empty';
+  /** State of charge that it ends at, by the doubt of the capacity; with `knownEnd` only. */
+  endSoc?: Band;
   /** What closed charges have taught of its times, already in the band; left out: nothing. */
   timeFactor?: TimeFactor;
   /** 'Learned from 14 charges: 6 % longer than reckoned.' */
@@ -336,6 +352,8 @@ export interface Refusal {
   /** 0-based, where one group is the reason. */
   group: number | null;
   text: string;
+  /** Refused because the curve is flat at the target: what the soonest way would take all the same, and where it would end. */
+  plateau?: { totalS: Band; soc: Band };
 }
 
 export interface ChargePlan {

@@ -50,6 +50,10 @@ export interface Draft {
   busbarsOff: boolean;
   takes: string;
   cautions: Caution[];
+  /** Charged to full or discharged to empty first, and counted from there. */
+  knownEnd?: 'full' | 'empty';
+  /** State of charge it ends at in one sample; with `knownEnd`. */
+  endSocIn?: (sample: Sample) => number;
 }
 
 /** Why a way cannot be done, in place of a draft. */

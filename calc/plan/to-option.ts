@@ -69,10 +69,20 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
     dominant: doubt.dominant,
     narrowsByS: doubt.narrowsByS,
     cautions: [],
+    ...knownEndOf(model, draft),
     ...(factor === null ? {} : { timeFactor: factor, timeFactorText: timeFactorText(factor) }),
   };
   option.cautions = optionCautions(model, draft, option);
   return option;
+}
+
+function knownEndOf(model: PlanModel, { knownEnd, endSocIn }: Draft): Pick<PlanOption, 'knownEnd' | 'endSoc'> {
+  if (knownEnd === undefined || endSocIn === undefined) return {};
+  const ends = model.samples.map(endSocIn);
+  return {
+    knownEnd,
+    endSoc: { p10: quantile(ends, 0.1), p50: quantile(ends, 0.5), p90: quantile(ends, 0.9) },
+  };
 }
 
 /** What the over-voltages left in the groups want of rest after the last current, s. */
@@ -127,10 +137,11 @@ function toPlannedStep(model: PlanModel, step: DraftStep, clock: Clock, at: numb
 const moduleAmpHours = (steps: DraftStep[]): number =>
   steps.reduce((sum, step) => sum + (step.kind === 'pre-level' ? 0 : step.ampHours), 0);
 
-function optionId({ way, finish, steps }: Draft): string {
+function optionId({ way, finish, steps, knownEnd }: Draft): string {
   const bulk = steps.filter((step) => step.kind === 'bulk');
   const channels = [...new Set(bulk.map((step) => step.channel?.channelId ?? step.resistorId ?? ''))];
-  return `${way}/${finish}/${channels.length === 1 ? channels[0] : 'several'}`;
+  const from = knownEnd === undefined ? '' : `/from-${knownEnd}`;
+  return `${way}/${finish}/${channels.length === 1 ? channels[0] : 'several'}${from}`;
 }
 
 function channelText(model: PlanModel, draft: Draft): string {
