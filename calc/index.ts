@@ -11,6 +11,8 @@ export { joiningInrush, type JoiningInrush } from './joining-inrush';
 export { setVoltageCap, type SetVoltageCap } from './set-voltage-cap';
 export { chemistryParameters, guessedLongResistance } from './chemistry';
 export { CHEMISTRIES, type ChemistryParameters } from './parameters/chemistries';
+export { PUBLISHED_CURVES, publishedCurves, type PublishedCurve } from './parameters/published-curves';
+export { checkOwnCurve, type CurveProblem, type OwnCurve } from './curve/own-curve';
 export { longResistance, splitLongResistance } from './resistance/long-resistance';
 export { pulseTimeConstant, type PulseResistance } from './resistance/pulse-time-constant';
 export { resistanceTemperatureFactor } from './resistance/temperature-factor';
