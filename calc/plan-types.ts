@@ -34,6 +34,11 @@ export interface ModuleParameters {
   /** Of the over-voltage that builds up, s, where it was read (pulseTimeConstant); null or left out: the chemistry's guess. */
   polarisationTimeConstantS?: number | null;
   linkResistanceOhm: number;
+  /** Share of its charge current below 10 °C and above 45 °C; charger chips have 0.2 to 0.4 (JEITA); left out: all of it. */
+  coldCurrentShare?: number | null;
+  warmCurrentShare?: number | null;
+  /** A group that rests below this is first brought up to it at C/10, V; null or left out: no such step. */
+  prechargeBelowVolts?: number | null;
   /** The workshop's own curve; null: the chemistry's. */
   curve: OcvTable | null;
   /** Share of rated capacity lost from the charge a month on the shelf; null: the chemistry's. */
@@ -86,7 +91,15 @@ export interface ChannelParameters {
   /** Where it measures its voltage. */
   senses: 'own-terminals' | 'module';
   leadResistanceOhm: number;
+  /** False: the leads are a guess (10 mΩ where `leadResistanceOhm` is 0) and so doubtful. Left out: as given. */
+  leadsMeasured?: boolean;
   displayStepVolts: number;
+  /** What its current is set and shown in, A; left out: without steps. */
+  displayStepAmps?: number;
+  /** It gives only this share of its current in a room warmer than that. */
+  derating?: { aboveCelsius: number; ampsShare: number } | null;
+  /** Share of the time in which it gives current, between thermal pauses; left out: all of it. */
+  duty?: number;
   singleGroup: boolean;
   canDischarge: boolean;
   dischargeAmps: number | null;
@@ -229,6 +242,8 @@ export interface PlannedStep {
   wattHours: number;
   endAmps: number;
   voltageLimitAtS: number | null;
+  /** Brings low groups up at C/10, before the charge proper. */
+  precharge?: true;
   /** Rest voltages per group after it has settled, V (of all groups of the module). */
   restVoltsAfter: number[];
 }

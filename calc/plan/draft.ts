@@ -5,6 +5,8 @@ import type { Sample } from './samples';
 /** One step of a way before it has its place on the clock. */
 export interface DraftStep {
   kind: StepKind;
+  /** Brings low groups up at C/10. */
+  precharge?: true;
   way: Way;
   channel: ChannelParameters | null;
   resistorId: string | null;

@@ -4,6 +4,8 @@ import type { ChannelParameters, Way } from '../plan-types';
 import { setVoltageCap } from '../set-voltage-cap';
 import type { DraftStep, NotPossible } from './draft';
 import type { PlanModel } from './plan-model';
+import { channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
+import { leadOhmOf } from './leads';
 import { chargerSd, sampleRun } from './sample-run';
 import { groupsAt, sampleString } from './series-step';
 import { limitText } from './words';
@@ -34,11 +36,17 @@ export function endStep(
     return { reason: `${channel.name} cannot stop a discharge at a voltage.` };
   const groups = groupsAt(model, groupIndexes, soc);
   const linkOhm = way === 'terminals' ? module.linkResistanceOhm : 0;
-  const leadResistanceOhm = channel.senses === 'module' ? 0 : channel.leadResistanceOhm;
+  const leadResistanceOhm = leadOhmOf(channel);
   const endAmps = END_RATE_C * Math.min(...groups.map((group) => group.capacityAh));
   const maxAmps = charging
-    ? Math.min(channel.maxAmps, module.maxChargeAmps)
-    : Math.min(channel.dischargeAmps ?? channel.maxAmps, module.maxDischargeAmps);
+    ? snappedAmps(
+        channel,
+        Math.min(
+          channelAmps(channel, channel.maxAmps, model.input.celsius),
+          module.maxChargeAmps * moduleCurrentShare(module, model.celsius),
+        ),
+      )
+    : snappedAmps(channel, Math.min(channel.dischargeAmps ?? channel.maxAmps, module.maxDischargeAmps));
   if (maxAmps <= endAmps)
     return { reason: `${channel.name} is too weak to find the ${end === 'full' ? 'full' : 'empty'} end.` };
   const ohm =
@@ -66,7 +74,7 @@ export function endStep(
       ceiling: true,
     };
   const source = {
-    maxAmps,
+    maxAmps: maxAmps * (channel.duty ?? 1),
     setVolts,
     maxWatts: channel.maxWatts,
     leadResistanceOhm,

@@ -128,6 +128,7 @@ function toPlannedStep(model: PlanModel, step: DraftStep, clock: Clock, at: numb
     ampHours: step.ampHours,
     wattHours: step.wattHours,
     endAmps: step.endAmps,
+    ...(step.precharge ? { precharge: true as const } : {}),
     voltageLimitAtS: step.voltageLimitAtS === null ? null : clock.startS[at]! + step.voltageLimitAtS,
     restVoltsAfter: step.socAfter.map((soc) => voltsAtSoc(model.curve, soc)),
   };
