@@ -15,8 +15,8 @@ const NEAR_END = 0.005;
  * To a state of charge where the voltage does not tell it: to a known end first, full or empty, then so many ampere-hours by
  * count. Through the terminals, or group by group where the channel takes one group.
  *
- * The count is what a person (or the charger) stops at, so its time is certain to the current, and the doubt of the capacity
- * shows in the state of charge that it ends at.
+ * The count is what a person (or the charger) stops at by the amps it is set to, so its time is certain, and the doubts of
+ * capacity and current show in the state of charge that it ends at.
  */
 export function knownEndWay(
   model: PlanModel,
@@ -103,16 +103,16 @@ function endAndCount(
     first,
     {
       ...second,
-      secondsIn: (sample) => second.seconds / sample.currentFactor,
-      ampHoursIn: () => second.ampHours,
+      secondsIn: () => second.seconds,
+      ampHoursIn: (sample) => second.ampHours * sample.currentFactor,
     },
   ];
 }
 
-/** By the count from the end, with the sample's own capacity. */
+/** By the count from the end, with the sample's own capacity and with what its current is more than the count says. */
 function endSocIn(model: PlanModel, sample: Sample, first: DraftStep, ampHours: number, end: 'full' | 'empty'): number {
   const group = first.groupIndexes[0]!;
   const from = first.socAfter[group]!;
   const moved = end === 'full' ? -ampHours : ampHours * model.efficiency;
-  return from + moved / sample.capacityAh[group]!;
+  return from + (moved * sample.currentFactor) / sample.capacityAh[group]!;
 }

@@ -61,11 +61,11 @@ describe('a target in state of charge on the plateau', () => {
     expect(from).toBeLessThan(0.02);
   });
 
-  it('ends where the doubt of the capacity lets it: 3 % of it on 40 Ah are ±1.5 % of charge from 10 to 90 %', () => {
+  it('ends where the doubt of the capacity lets it: 3 % of it and 1 % of current on 40 Ah are ±1.6 % of charge from 10 to 90 %', () => {
     const option = fromFull({ samples: 256 });
     const { p10, p50, p90 } = option.endSoc!;
     expect(p50).toBeCloseTo(0.6, 2);
-    expect(Math.abs((p90 - p10) / (2 * 1.2816 * 0.03 * 0.4) - 1)).toBeLessThan(0.1);
+    expect(Math.abs((p90 - p10) / (2 * 1.2816 * Math.hypot(0.03, 0.01) * 0.4) - 1)).toBeLessThan(0.08);
   });
 
   it('is over five times nearer than a voltage target of the same place: its end against what the voltage allows', () => {
