@@ -125,10 +125,12 @@ describe.skipIf(!logsThere)('measured charges from published tables and committe
     expect(inBand(predicted.totals, measured.totalS, 0.98), line(log)).toBe(true);
   });
 
-  // No curve and no resistance of this cell is shipped: reported, not judged.
-  it('LCO by the NMC curve and a guessed resistance comes out far too short, and the line says so', () => {
+  // No curve and no resistance of this cell is shipped, and NMC with a guessed resistance is no likeness: it comes out 44 %
+  // too short, since this cell takes in a quarter of its charge in the taper. Reported.
+  it.fails('LCO by the NMC curve: total inside the 98 % band', () => {
     console.info(line(LOGS.lco));
-    expect(both(LOGS.lco).predicted.totalS).toBeLessThan(both(LOGS.lco).measured.totalS);
+    const { measured, predicted } = both(LOGS.lco);
+    expect(inBand(predicted.totals, measured.totalS, 0.98)).toBe(true);
   });
 
   it.each([LOGS.lmo15, LOGS.lmo10, LOGS.lfp])('$file replayed to a quarter: the total to 5 %', (log) => {
