@@ -24,6 +24,8 @@ export const DEFAULT_SPREADS = {
   meterVolts: 0.002,
   readingVolts: 0.001,
   targetVolts: 0.001,
+  /** A pack's own counter, or a person's word for it: a guess. */
+  targetSoc: 0.02,
   /** A charger whose voltmeter was never compared with the workshop's. */
   chargerVolts: 0.005,
   curveVolts: 0.004,

@@ -1,5 +1,6 @@
 import { voltsAtSoc } from '../curve/ocv';
 import { socOf } from './soc-of';
+import { isGiven } from '../require';
 import { CHEMISTRIES } from '../parameters/chemistries';
 import { temperatureVolts } from '../parameters/temperature-coefficient';
 import { splitLongResistance, longResistance } from '../resistance/long-resistance';
@@ -64,6 +65,7 @@ export function planModel(input: PlanInput): PlanModel {
     readVolts,
     lostSoc,
     targetVolts: target.volts,
+    targetSoc: isGiven(target.soc) ? { soc: target.soc, sd: target.socSd ?? DEFAULT_SPREADS.targetSoc } : null,
     capacityAh,
     longOhm,
     celsius,
@@ -78,13 +80,13 @@ export function planModel(input: PlanInput): PlanModel {
     groups: startVolts.map((restVolts, group) => ({
       capacityAh: capacityAh[group]!,
       ...splitLongResistance(longOhm[group]!),
-      polarisationTimeConstantS: chemistry.polarisationTimeConstantS,
+      polarisationTimeConstantS: module.polarisationTimeConstantS ?? chemistry.polarisationTimeConstantS,
       restVolts,
     })),
     startSoc,
     startVolts,
     targetVolts: target.volts,
-    targetSoc: socOf(curve, target.volts),
+    targetSoc: target.soc ?? socOf(curve, target.volts),
     toleranceVolts: target.toleranceVolts,
     direction: sum <= target.volts * startVolts.length ? 'charge' : 'discharge',
     celsius,

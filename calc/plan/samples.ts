@@ -1,3 +1,4 @@
+import { voltsAtSoc } from '../curve/ocv';
 import type { OcvTable } from '../types';
 import type { Doubt, Spreads } from '../plan-types';
 import { socOf } from './soc-of';
@@ -70,6 +71,8 @@ export interface SampleBasis {
   /** Charge lost on the shelf since, as a share of the capacity. */
   lostSoc: number;
   targetVolts: number;
+  /** Where the target is a state of charge and not the volts. */
+  targetSoc?: { soc: number; sd: number } | null;
   capacityAh: number[];
   longOhm: number[];
   celsius: number;
@@ -110,15 +113,19 @@ function toSample(basis: SampleBasis, point: readonly number[]): Sample {
     spareMeter +
     (spreads.readingVolts * normal('spare-scatter')) / Math.sqrt(basis.readVolts.length) +
     spreads.hysteresisVolts * even('spare-hysteresis');
+  const bySoc = basis.targetSoc ?? null;
+  const ownTargetSoc = bySoc === null ? null : bySoc.soc + bySoc.sd * normal('target-scatter');
   const targetShiftVolts =
-    curveShift +
-    targetMeter +
-    spreads.targetVolts * normal('target-scatter') +
-    spreads.hysteresisVolts * even('target-hysteresis');
+    ownTargetSoc !== null
+      ? voltsAtSoc(curve, ownTargetSoc) - basis.targetVolts
+      : curveShift +
+        targetMeter +
+        spreads.targetVolts * normal('target-scatter') +
+        spreads.hysteresisVolts * even('target-hysteresis');
   const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * normal('self-discharge'));
   return {
     startSoc: basis.readVolts.map((volts) => socOf(curve, volts + spareShift) - lost),
-    targetSoc: socOf(curve, basis.targetVolts + targetShiftVolts),
+    targetSoc: ownTargetSoc ?? socOf(curve, basis.targetVolts + targetShiftVolts),
     capacityAh: basis.capacityAh.map((ampHours) => ampHours * capacityFactor),
     longOhm: basis.longOhm.map((ohm) => ohm * resistanceFactor),
     currentFactor: Math.exp(spreads.currentRelative * normal('current')),
