@@ -12,7 +12,7 @@ import type { ModuleType } from '../entities/module-type';
 import type { Spare } from '../entities/spare';
 import type { SpareReading } from '../entities/spare-reading';
 import { conflict, invalid, notFound } from '../errors/domain-error';
-import { listUsableChannels } from '../repositories/chargers.repository';
+import { listChannels, listUsableChannels } from '../repositories/chargers.repository';
 import { listMeters } from '../repositories/meters.repository';
 import { findModuleType } from '../repositories/module-types.repository';
 import { listOpenHolds } from '../repositories/open-holds.repository';
@@ -23,6 +23,7 @@ import { workshopForPlans } from '../repositories/workshop-for-plans.repository'
 import { channelHolders } from './channel-availability';
 import { titleOf } from './charge-words';
 import { toInstant } from './instants';
+import { learnedByCharger } from './learned-factors';
 import { correctedVolt, meterOffsetSdVolts } from './meter-trust';
 import { neighbourFor } from './neighbour-for';
 import {
@@ -88,7 +89,7 @@ export async function buildPlanInputs(
   const spareNow = spareState(spare, type, reading, spareMeter, now);
   const targetVolts = correctedVolt(request.targetVolts, packMeter);
   const toleranceMillivolts = request.toleranceMillivolts ?? workshop.toleranceMillivolts;
-  const bench = await channelsFor(manager, workshopId, spare.id, meters, now);
+  const bench = await channelsFor(manager, workshopId, spare, request.withoutLearned === true, meters, now);
   const meterVolts = meterOffsetSdVolts(
     [packMeter, spareMeter].filter((meter) => meter !== null),
     now,
@@ -207,15 +208,18 @@ function packMeterOf(request: PlanRequest, meters: ReadonlyMap<string, Meter>): 
 async function channelsFor(
   manager: EntityManager,
   workshopId: string,
-  spareId: string,
+  spare: Spare,
+  withoutLearned: boolean,
   meters: ReadonlyMap<string, Meter>,
   now: number,
 ): Promise<{ channels: FrozenInputs['channels']; names: PlanDto['channels']; blocked: RuledOutWay[] }> {
-  const holds = (await listOpenHolds(manager, workshopId)).filter(({ charge }) => charge.spareId !== spareId);
+  const holds = (await listOpenHolds(manager, workshopId)).filter(({ charge }) => charge.spareId !== spare.id);
   const holders = channelHolders(holds, now);
   const channels: FrozenInputs['channels'] = [];
   const names: PlanDto['channels'] = {};
   const blocked: RuledOutWay[] = [];
+  const chargerOf = new Map((await listChannels(manager, workshopId)).map(({ id, chargerId }) => [id, chargerId]));
+  const learned = await learnedByCharger(manager, workshopId, spare.moduleTypeId, chargerOf);
   for (const { channel, charger } of await listUsableChannels(manager, workshopId)) {
     const holder = holders.get(channel.id);
     if (holder?.freeAt === null) {
@@ -235,7 +239,9 @@ async function channelsFor(
       freeAt: freeAt > now ? toInstant(freeAt) : null,
     };
     const meter = meters.get(charger.meterId ?? '') ?? null;
-    channels.push(channelParameters(channel, meter, (freeAt - now) / 1000, now));
+    channels.push(
+      channelParameters(channel, meter, (freeAt - now) / 1000, now, withoutLearned ? null : learned.get(charger.id)),
+    );
   }
   return { channels, names, blocked };
 }

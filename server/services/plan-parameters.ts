@@ -4,6 +4,7 @@ import type {
   ModuleParameters,
   ResistorParameters,
   SpareState,
+  TimeFactor,
   WorkshopParameters,
 } from '@/calc/plan-types';
 import type { Channel } from '../entities/channel';
@@ -72,6 +73,8 @@ export const channelParameters = (
   meter: Meter | null,
   freeInS: number,
   now: number,
+  /** Learned of the planned type on this charger; null: taken off; left out: nothing yet. */
+  timeFactor?: TimeFactor | null,
 ): ChannelParameters => ({
   channelId: channel.id,
   name: channel.name,
@@ -89,6 +92,7 @@ export const channelParameters = (
   loadOhm: channel.loadOhm,
   freeInS,
   offsetSdVolts: chargerOffsetSdVolts(meter, now),
+  ...(timeFactor === undefined ? {} : { timeFactor }),
 });
 
 export const resistorParameters = (resistor: LevellingResistor): ResistorParameters => ({

@@ -20,6 +20,7 @@ export type {
   GroupVerdict,
   CheckVerdict,
   StepKind,
+  TimeFactor,
 } from '@/calc/plan-types';
 export type { Direction } from '@/calc/types';
 
@@ -37,6 +38,8 @@ export const planSchema = z.object({
   /** Number of the repair in the workshop's own words, and the module's position. */
   repairRef: optionalText('The repair', 30),
   modulePosition: optionalText('The module position', 30),
+  /** True: what closed charges have taught of the times is left out. */
+  withoutLearned: z.optional(z.boolean()),
 });
 export type PlanRequest = z.infer<typeof planSchema>;
 
