@@ -47,7 +47,7 @@ export default function Plan() {
       <Columns
         order={['facts', 'work', 'side']}
         facts={<PlanFacts page={page} onChange={change} />}
-        work={<PlanWaysPart page={page} onTake={take} />}
+        work={<PlanWaysPart page={page} onTake={take} onChange={change} />}
         side={<PlanSide page={page} acts={acts} />}
       />
     </Screen>

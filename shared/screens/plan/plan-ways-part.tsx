@@ -6,10 +6,19 @@ import { NoWay, PlanWork } from '@/shared/ui/plan/plan-work';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { ErrorState } from '@/shared/ui/states/error-state';
 import { Loading } from '@/shared/ui/states/loading';
+import type { PlanTyped } from '@/shared/ui/plan/plan-typed';
 import type { PlanPage } from './use-plan-page';
 
 /** Every way side by side, or why there is none yet. */
-export function PlanWaysPart({ page, onTake }: { page: PlanPage; onTake: (spareId: string) => void }) {
+export function PlanWaysPart({
+  page,
+  onTake,
+  onChange,
+}: {
+  page: PlanPage;
+  onTake: (spareId: string) => void;
+  onChange: (change: Partial<PlanTyped>) => void;
+}) {
   const { dto, refused, spare, settled, now, others, plan } = page;
   if (dto && refused && spare)
     return (
@@ -30,6 +39,8 @@ export function PlanWaysPart({ page, onTake }: { page: PlanPage; onTake: (spareI
         now={now}
         old={plan.isPlaceholderData}
         onChoose={page.choose}
+        withoutLearned={page.typed.withoutLearned === 'yes'}
+        onWithoutLearned={(without) => onChange({ withoutLearned: without ? 'yes' : '' })}
       />
     );
   if (plan.isError && settled)

@@ -11,7 +11,7 @@ import { useFormats } from '@/shared/ui/format/formats';
 import { dayOf } from '@/shared/ui/format/zone';
 import { bestOption } from '@/shared/ui/plan/best-option';
 import { isOfTheModule } from '@/shared/ui/plan/plan-refused';
-import { fieldOf, requestOf, type PlanField, type PlanTyped } from '@/shared/ui/plan/plan-typed';
+import { emptyPlan, fieldOf, requestOf, type PlanField, type PlanTyped } from '@/shared/ui/plan/plan-typed';
 import { useAddress } from './use-address';
 import { useOtherSpares } from './use-other-spares';
 
@@ -22,7 +22,8 @@ const settleMs = 400;
 export function usePlanPage() {
   const { topUpOf, insteadOf, initial } = useAddress();
   const draft = useDraft(`plan.${topUpOf ?? insteadOf ?? initial.spareId}`, initial);
-  const typed = draft.value;
+  // A draft of an earlier version may lack a field.
+  const typed: PlanTyped = { ...emptyPlan, ...draft.value };
   const { zone } = useFormats();
   const now = useNow(30_000);
   const today = dayOf(now, zone);

@@ -1,9 +1,11 @@
+import type { ReactNode } from 'react';
 import { View } from 'react-native';
 import type { ChargePlan, PlanOption } from '@/calc/plan-types';
 import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { amps, ampHours, volts } from '../format/quantities';
 import { Caution } from '../primitives/call-out';
+import { Link } from '../primitives/link';
 import { Txt } from '../primitives/txt';
 import { doubtWords, wayNames } from './way-words';
 
@@ -39,8 +41,43 @@ export function WhatItTakes({ option, channelNames }: { option: PlanOption; chan
   );
 }
 
-/** Which number makes most of the band, and every caution of the plan and the way. */
-export function HowFarToTrustIt({ option, plan }: { option: PlanOption; plan: ChargePlan }) {
+/** What closed charges have taught of the times, on how many it stands, and the way to reckon without it. */
+export function LearnedLine({
+  option,
+  without,
+  onWithout,
+}: {
+  option: Pick<PlanOption, 'timeFactorText'>;
+  /** It is left out of the times. */
+  without: boolean;
+  onWithout: (without: boolean) => void;
+}) {
+  const text = without ? 'What closed charges have taught is left out of these times.' : option.timeFactorText;
+  if (text === undefined) return null;
+  return (
+    <View>
+      <Txt>{text}</Txt>
+      <Link
+        kind="small"
+        tight
+        title={without ? 'with what was learned' : 'without what was learned'}
+        onPress={() => onWithout(!without)}
+        style={{ alignSelf: 'flex-start' }}
+      />
+    </View>
+  );
+}
+
+/** Which number makes most of the band, what was learned, and every caution of the plan and the way. */
+export function HowFarToTrustIt({
+  option,
+  plan,
+  learned,
+}: {
+  option: PlanOption;
+  plan: ChargePlan;
+  learned?: ReactNode;
+}) {
   const doubt = doubtWords[option.dominant];
   const cautions = [...plan.cautions, ...option.cautions].filter(
     (caution, index, all) => all.findIndex((other) => other.text === caution.text) === index,
@@ -54,6 +91,7 @@ export function HowFarToTrustIt({ option, plan }: { option: PlanOption; plan: Ch
         {`Most of the band comes from ${doubt.name}.`}
         {option.narrowsByS >= 60 ? ` ${doubt.advice} would narrow it by ${duration(option.narrowsByS)}.` : ''}
       </Txt>
+      {learned}
       {cautions.map((caution) => (
         <Caution key={caution.text}>{caution.text}</Caution>
       ))}

@@ -5,7 +5,7 @@ import { planSchema } from '@/shared/contract/plan';
 import { parseTimeOfDay } from '../format/parse';
 import { instantOfDay } from '../format/zone';
 
-/** As typed; instants are a day of the workshop's zone and a time of day. */
+/** As typed; instants are a day of the workshop's zone and a time of day, a switch is '' or 'yes'. */
 export interface PlanTyped {
   spareId: string;
   targetVolts: string;
@@ -18,6 +18,8 @@ export interface PlanTyped {
   readyTime: string;
   clipDay: string;
   clipTime: string;
+  /** 'yes': what closed charges have taught of the times is left out. */
+  withoutLearned: string;
 }
 
 export type PlanField = keyof PlanTyped;
@@ -34,6 +36,7 @@ export const emptyPlan: PlanTyped = {
   readyTime: '',
   clipDay: '',
   clipTime: '',
+  withoutLearned: '',
 };
 
 /** The typed field that a path of the request belongs to. */
@@ -85,6 +88,7 @@ export function requestOf(
     clipOnAt: clipOnAt ?? null,
     repairRef: typed.repairRef,
     modulePosition: typed.modulePosition,
+    ...(typed.withoutLearned === 'yes' ? { withoutLearned: true } : {}),
   });
   if (!parsed.success) {
     for (const issue of parsed.error.issues) {

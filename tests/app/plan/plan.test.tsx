@@ -122,6 +122,36 @@ describe('planning a charge', () => {
     expect(await press('Checks before clipping on')).toBeTruthy();
   });
 
+  it('says what 14 closed charges have taught, and reckons and keeps without it where that is taken off', async () => {
+    const text = 'Learned from 14 charges: 6 % longer than reckoned.';
+    server.answers['POST /api/plans'] = (body) =>
+      Response.json(
+        (body as { withoutLearned?: boolean }).withoutLearned
+          ? planned
+          : {
+              ...planned,
+              plan: {
+                ...planned.plan,
+                options: planned.plan.options.map((option) => ({
+                  ...option,
+                  timeFactor: { mean: 1.06, sd: 0.03, charges: 14 },
+                  timeFactorText: text,
+                })),
+              },
+            },
+      );
+    server.answers['POST /api/charges'] = () => Response.json({ id: 'c7', number: 'C-0007', rev: 1 });
+    await type('Pack rests at', '3.92');
+    expect(await screen.findByText(text)).toBeTruthy();
+    fireEvent.click(await press('without what was learned'));
+    expect(await press('with what was learned')).toBeTruthy();
+    await waitFor(() => expect(screen.queryByText(text)).toBeNull());
+    await reckoned();
+    fireEvent.click(checks());
+    await waitFor(() => expect(kept()).toHaveLength(1));
+    expect(kept()[0]!.body).toMatchObject({ withoutLearned: true });
+  });
+
   it('made again from a charge keeps the new one in place of it', async () => {
     cleanup();
     address.params = { spare: 's1', insteadOf: 'c1', target: '3.92', tolerance: '5' };
