@@ -230,6 +230,7 @@ export function pastRestCheck(past: PastCharge): RestCheck | null {
     meterId: handMeterId,
     personId: personId(past),
     verdict: judgeCheck(past.checkVolts, target, module, spare.capacityAh),
+    early: false,
     createdAt: past.checkedAt,
   };
 }

@@ -62,10 +62,14 @@ export function checkDueText(file: ChargeFile): AlertText {
       : ` Nobody has said that ${channelsOfLast(file) || 'the resistor'} is off: look at that before you measure.`;
   return {
     title: titleAtChannel(file, lastStep(file)),
-    seen: `Rested ${durationText(restedS(file))}.`,
+    seen: `Rested ${durationText(restedS(file))}.${settledText(file)}`,
     checkFirst: `Each group with the meter, three decimals, against ${cellText(charge.frozen.target.volts)}.${unsaid}`,
   };
 }
+
+/** Why a check is due before the workshop's minimum rest is over. */
+const settledText = (file: ChargeFile): string =>
+  restedS(file) < file.charge.frozen.workshop.minRestS - 1 ? ' Its readings say that it has settled.' : '';
 
 export function stepSwapText(file: ChargeFile, wait: SwapWait): AlertText {
   const { charge } = file;

@@ -6,6 +6,7 @@ import type {
   InstantBand,
   ReadingDto,
   RestCheckDto,
+  RestDto,
 } from '@/shared/contract/charge';
 import { can } from '@/shared/contract/roles';
 import type { Config } from '../config';
@@ -186,6 +187,7 @@ export async function chargeDto(
     readings: byTime(file.readings).map((reading) => readingDto(file, reading, member)),
     restChecks: file.restChecks.map((check) => restCheckDto(file, check)),
     events: events.map((event) => eventDto(file, event)),
+    rest: restDto(fresh),
     dominant: reckoning?.dominant ?? charge.option.dominant,
     createdAt: toInstant(charge.createdAt),
     labelUrl: `${(config.publicUrl ?? '').replace(/\/+$/, '')}/charges/${charge.id}`,
@@ -207,6 +209,14 @@ function freshened(file: ChargeFile, now: number): ChargeFile {
   const fresh = { ...file, charge: { ...charge } };
   reckonTo(fresh, now);
   return fresh;
+}
+
+/** The forecast while it rests; over and checked, it is history. */
+function restDto({ charge }: ChargeFile): RestDto | null {
+  const rest = charge.reckoning?.rest ?? null;
+  if (rest === null || (charge.stage !== 'resting' && charge.stage !== 'check-due')) return null;
+  const { enoughAtS, ...said } = rest;
+  return { ...said, enoughAt: enoughAtS === null ? null : toInstant(instantOf(charge, enoughAtS)) };
 }
 
 function expectedOf({ charge }: ChargeFile): ChargeDto['expected'] {
@@ -250,6 +260,7 @@ const restCheckDto = (file: ChargeFile, check: RestCheck): RestCheckDto => ({
   by: personRef(file.people, check.personId)!,
   groupVolts: check.groupVolts,
   celsius: check.celsius,
+  early: check.early === true,
   verdict: check.verdict,
 });
 

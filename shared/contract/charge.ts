@@ -1,6 +1,6 @@
 import * as z from 'zod/mini';
 import { id, instant, optionalText, reason, type Instant, type PersonRef } from './common';
-import type { CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
+import type { Band, CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
 import { typedGroupVolts } from './group-volts';
 import { groupVolts, optionalQuantity } from './quantity';
 
@@ -230,7 +230,23 @@ export interface RestCheckDto {
   by: PersonRef;
   groupVolts: number[];
   celsius: number | null;
+  /** It came before the minimum rest was over. */
+  early: boolean;
   verdict: CheckVerdict;
+}
+
+/** What the group readings since the end of current say of the rest. */
+export interface RestDto {
+  /** Where each group will settle, V: 10, 50 and 90 %. */
+  settledVolts: Band[];
+  /** That what is still to come is within a tenth of the tolerance in every group, 0…1. */
+  chance: number;
+  /** The chance is 90 % or more: the check may come before the minimum rest is over. */
+  restedEnough: boolean;
+  /** Since when, or when that is expected; null: not within a day. */
+  enoughAt: Instant | null;
+  /** Group readings behind it. */
+  readings: number;
 }
 
 export interface ChargeLink {
@@ -264,6 +280,8 @@ export interface ChargeDto extends ChargeCardDto {
   readings: ReadingDto[];
   restChecks: RestCheckDto[];
   events: ChargeEventDto[];
+  /** Null where nothing rests for sure (nobody has said that the current is off), or with fewer than three readings. */
+  rest: RestDto | null;
   dominant: string | null;
   createdAt: Instant;
   /**

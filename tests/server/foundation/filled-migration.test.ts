@@ -26,12 +26,18 @@ beforeAll(async () => {
 });
 afterAll(() => bench.server.close());
 
+/** What the migrations since the first add. */
+const comeAndGo = { tables: [] as string[], columns: ['neighbour_spare_id', 'passed_at', 'early'] };
+
 /** Every row of every table but the columns that come and go. */
 async function everything(): Promise<Record<string, unknown[]>> {
   const rows: Record<string, unknown[]> = {};
   for (const { tableName } of dataSource.entityMetadatas) {
+    if (comeAndGo.tables.includes(tableName)) continue;
     const found = (await dataSource.query(`SELECT * FROM ${tableName} ORDER BY id`)) as Record<string, unknown>[];
-    rows[tableName] = found.map(({ neighbour_spare_id: _gone, passed_at: _too, ...row }) => row);
+    rows[tableName] = found.map((row) =>
+      Object.fromEntries(Object.entries(row).filter(([column]) => !comeAndGo.columns.includes(column))),
+    );
   }
   return rows;
 }
