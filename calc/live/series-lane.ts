@@ -10,6 +10,9 @@ import type { ModuleState } from './module-state';
 /** On the mark: the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
 const END_AMPS_SHARE = 0.98;
 const LEAST_END_AMPS = 1e-3;
+/** Near the end: amps within this many times the planned end current, rest voltage within this of the aim, V a group. */
+const NEAR_END_AMPS = 2;
+const NEAR_END_VOLTS = 0.002;
 /** Times the planned end current that may still flow once on the mark is reached. */
 const TRICKLE = 1.5;
 
@@ -133,6 +136,13 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
       return (
         electromotive(groups) + sign * amps * groups.reduce((sum, group) => sum + group.ohmicResistanceOhm, linkOhm)
       );
+    },
+    isNearEnd: (state, amps) => {
+      if (tapers && amps < NEAR_END_AMPS * Math.abs(step.endAmps)) return true;
+      const rest = joined
+        ? voltsAtSoc(model.curve, joinedSoc(model, state, step))
+        : step.groupIndexes.reduce((sum, group) => sum + voltsAtSoc(model.curve, state.soc[group]!), 0);
+      return sign * (aimVolts - rest) < NEAR_END_VOLTS * count;
     },
     atSetVolts: (terminalVolts, amps) =>
       source.setVolts !== null &&

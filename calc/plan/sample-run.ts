@@ -25,6 +25,8 @@ export interface SampleRunInput {
   endAmps: number | null;
   /** In a taper that has been seen: the current with which every sample begins, in place of the set voltage; else null. */
   startAmps?: number | null;
+  /** Leads of the source in one sample, ohm, where they differ between samples. */
+  leadOhmIn?: (sample: Sample) => number;
   /** The string between the clips where the current begins, in one sample. */
   stringIn: (sample: Sample) => { string: StringCharge; ohm: number };
 }
@@ -43,11 +45,13 @@ export function sampleRun(input: SampleRunInput): SampleRun {
     const before = known.get(sample);
     if (before) return before;
     const { string, ohm } = input.stringIn(sample);
-    const resistanceOhm = ohm + source.leadResistanceOhm + input.linkOhm;
+    const resistanceOhm = ohm + (input.leadOhmIn?.(sample) ?? source.leadResistanceOhm) + input.linkOhm;
     const asSet =
       source.setVolts === null
         ? null
-        : source.setVolts + count * sample.curveShiftVolts + input.chargerSd * sample.chargerDraw;
+        : source.setVolts +
+          count * (sample.curveShiftVolts - (sample.overShiftVolts ?? 0)) +
+          input.chargerSd * sample.chargerDraw;
     const startAmps = input.startAmps ?? null;
     const law: CurrentLaw = {
       openVolts: (ampHours) => stringVolts(string, ampHours),

@@ -4,6 +4,7 @@ import { socOf } from './soc-of';
 import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { latinHypercube } from '../statistics/latin-hypercube';
+import { normalCdf } from '../statistics/normal-cdf';
 
 /** What one axis of the sample set stands for. */
 const AXES = [
@@ -59,7 +60,9 @@ export interface Sample {
   curveShiftVolts: number;
   /** Standard deviations that a charger's own voltmeter is off. */
   chargerDraw: number;
-  /** The draws behind it, one per axis, for the shares of the doubts. */
+  /** What the module stands higher under current than the model has it, V per group; left out: 0. */
+  overShiftVolts?: number;
+  /** The draws behind it, one per axis, for the shares of the doubts; a running charge adds its own after them. */
   draws: number[];
 }
 
@@ -86,17 +89,18 @@ export interface SampleBasis {
  * the nominal run.
  */
 export function drawSamples(basis: SampleBasis, count: number, seed: number): Sample[] {
-  if (count === 1) return [toSample(basis, new Array<number>(AXES.length).fill(0.5))];
-  return latinHypercube(count, AXES.length, seed).map((point) => toSample(basis, point));
+  if (count === 1) return [sampleOf(basis, new Array<number>(AXES.length).fill(0))];
+  return latinHypercube(count, AXES.length, seed).map((point) => sampleOf(basis, point.map(inverseNormal)));
 }
 
 /** The axes in the order of `Sample.draws`. */
 export const SAMPLE_AXES: readonly Axis[] = AXES;
 
-function toSample(basis: SampleBasis, point: readonly number[]): Sample {
+/** The module of one set of standard normal draws, in the order of `SAMPLE_AXES`. */
+export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
   const { spreads, curve } = basis;
-  const normal = (axis: Axis): number => inverseNormal(point[AXES.indexOf(axis)]!);
-  const even = (axis: Axis): number => 2 * point[AXES.indexOf(axis)]! - 1;
+  const normal = (axis: Axis): number => draws[AXES.indexOf(axis)]!;
+  const even = (axis: Axis): number => 2 * normalCdf(normal(axis)) - 1;
   const capacityFactor = Math.exp(spreads.capacityRelative * normal('capacity'));
   const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * normal('temperature')));
   const resistanceFactor =
@@ -126,6 +130,6 @@ function toSample(basis: SampleBasis, point: readonly number[]): Sample {
     targetShiftVolts,
     curveShiftVolts: curveShift,
     chargerDraw: normal('charger-meter'),
-    draws: point.map((value) => inverseNormal(value)),
+    draws,
   };
 }
