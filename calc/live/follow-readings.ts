@@ -6,7 +6,7 @@ import { PARTICLES, LIVE_SPREADS } from './live-spreads';
 import type { LivePast } from './live-rounds';
 import { isFull, Looks, type Since } from './looks';
 import { observationsOf, type Observation } from './observations';
-import { oddAmps, oddCelsius, oddGroup, oddVolts, type WarmFrom } from './odd-looks';
+import { offOfVolts, oddAmps, oddCelsius, oddGroup, oddVolts, type WarmFrom } from './odd-looks';
 import { OddRuns, type OddLook } from './odd-run';
 import { ParticleSet } from './particle-set';
 import type { KeptReading } from './thin-readings';
@@ -62,10 +62,12 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     };
     const { amps, terminalVolts, groupVolts, celsius } = reading.reading;
     const terminal = circuit ? looks.terminal(at, circuit, since) : null;
-    if (terminal) followed.chance = twoSidedTail(set.offOf(terminal, 0).level);
+    const off = circuit && terminal ? offOfVolts(set, looks, terminal, at, circuit) : null;
+    if (off) followed.chance = twoSidedTail(off.level);
     if (circuit) {
       const current = oddAmps(set, looks, at, circuit);
-      const volts = current === null || terminalVolts !== null ? oddVolts(set, looks, at, circuit, since) : null;
+      const asked = off !== null && (current === null || terminalVolts !== null);
+      const volts = asked ? oddVolts(set, terminal!, off, at, circuit) : null;
       const byAmps = volts?.quantity === 'amps' ? volts : null;
       judge('amps', amps !== null, current ?? byAmps);
       judge('terminal-volts', terminalVolts !== null, byAmps ? null : volts);

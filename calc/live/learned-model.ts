@@ -5,6 +5,9 @@ import { MODEL_AXIS } from './live-draws';
 import type { LiveModel } from './live-model';
 import type { Followed } from './follow-readings';
 
+/** A resistance is not nothing. */
+const LEAST_FACTOR = 0.2;
+
 /** The plan's module with what the readings have taught: its capacity and resistance where they have, and the samples. */
 export function learnedModel(
   model: PlanModel,
@@ -31,11 +34,11 @@ export function learnedModel(
     },
     samples: set.samples.map((sample, at) => {
       const shared = set.sharedOf('volts', at);
-      const variance = kept ** 2 * (shared.variance ?? 0) + LIVE_SPREADS.modelVolts ** 2 * (1 - kept ** 2);
-      return {
-        ...sample,
-        overShiftVolts: kept * shared.mean + Math.sqrt(variance) * sample.draws[MODEL_AXIS]!,
-      };
+      const variance = kept ** 2 * (shared.variance ?? 0) + 1 - kept ** 2;
+      const error = kept * shared.mean + Math.sqrt(variance) * sample.draws[MODEL_AXIS]!;
+      // The error under current is one of the resistance, as it is then.
+      const factor = Math.max(LEAST_FACTOR, 1 + LIVE_SPREADS.modelRelative * error);
+      return { ...sample, longOhm: sample.longOhm.map((ohm) => ohm * factor) };
     }),
     weights: set.weights,
   };

@@ -10,9 +10,20 @@ export const LEADS_AXIS = SAMPLE_AXES.length;
 export const MODEL_AXIS = SAMPLE_AXES.length + 1;
 export const LIVE_AXES = SAMPLE_AXES.length + 2;
 
-/** The plan's Latin hypercube with the axes of a running charge, as standard normal draws. */
-export const liveDraws = (count: number, seed: number): number[][] =>
-  latinHypercube(count, LIVE_AXES, seed).map((point) => point.map(inverseNormal));
+/** Sets that were drawn last: each reading of a charge starts from the same one. */
+const drawn = new Map<string, number[][]>();
+const MOST_DRAWN = 16;
+
+/** The plan's Latin hypercube with the axes of a running charge, as standard normal draws. Not to be changed. */
+export function liveDraws(count: number, seed: number): number[][] {
+  const key = `${count}/${seed}`;
+  const known = drawn.get(key);
+  if (known) return known;
+  const draws = latinHypercube(count, LIVE_AXES, seed).map((point) => point.map(inverseNormal));
+  if (drawn.size >= MOST_DRAWN) drawn.delete(drawn.keys().next().value!);
+  drawn.set(key, draws);
+  return draws;
+}
 
 export const liveSample = (model: PlanModel, draws: number[]): Sample => sampleOf(model.basis, draws);
 

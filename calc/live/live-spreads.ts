@@ -7,10 +7,13 @@
  */
 export const LIVE_SPREADS = {
   /**
-   * What the one-RC model and the curve's shape may be off under current, V a group: it moves slowly, so that a hundred
-   * readings of one hour say little more of the module than a few. As much as the curve's own offset.
+   * What the one-RC model may be off under current, as a share of the over-voltage: it moves slowly, so that a hundred readings
+   * of one hour say little more of the module than a few. One RC pair for the many of a cell: measured tapers grow slower by
+   * half and more on their way.
    */
-  modelVolts: 0.004,
+  modelRelative: 0.1,
+  /** And beside it, V a group: the curve's shape between its points. */
+  modelVolts: 0.001,
   /** The model's error forgets itself over this much charge, as a share of the capacity: the width of a hump of a curve. */
   modelCorrelationSoc: 0.08,
   /** Flicker of a terminal voltmeter between two looks, V, beside its last digit. */

@@ -10,6 +10,12 @@ import type { Look } from './particle-set';
 const SPARE_METER = SAMPLE_AXES.indexOf('spare-meter');
 const TEMPERATURE = SAMPLE_AXES.indexOf('temperature');
 
+/** A look at the voltage between the clips. */
+export interface TerminalLook extends Look {
+  volts: number;
+  expected: (sample: Sample) => number;
+}
+
 /** What changes from one look to the next. */
 export interface Since {
   /** Share of the model's error that is left since the last look at a voltage. */
@@ -64,15 +70,20 @@ export class Looks {
     return (sample) => rest(sample) + fixed + inner * (sample.longOhm[0]! / this.nominalOhm);
   }
 
+  /** What the model may be off under this current, V a group. */
+  modelSd({ over }: Observation, { groups, shares, lane, knot, ohmicOhm }: Circuit): number {
+    const through = groups.reduce(
+      (sum, group, at) => sum + shares[at]! * over[group]!,
+      lane.sign * knot.amps * ohmicOhm,
+    );
+    return Math.hypot(LIVE_SPREADS.modelRelative * through, LIVE_SPREADS.modelVolts);
+  }
+
   /**
    * The voltage between the clips at the current that flows; in a taper whose volts nobody has read it is the set voltage,
    * which the charger holds.
    */
-  terminal(
-    observation: Observation,
-    circuit: Circuit,
-    since: Since,
-  ): (Look & { volts: number; expected: (sample: Sample) => number }) | null {
+  terminal(observation: Observation, circuit: Circuit, since: Since): TerminalLook | null {
     const { kept } = observation;
     const { channel, count, lane, knot } = circuit;
     const { model } = this;
@@ -111,7 +122,7 @@ export class Looks {
       memory: 'volts',
       residual: one(place === 'module' ? atModule : atSupply),
       ...(place === null && amps > 0 ? { otherResidual: one(atModule) } : {}),
-      sharedSd: LIVE_SPREADS.modelVolts,
+      sharedSd: this.modelSd(observation, circuit),
       kept: since.keptVolts,
       ownVariance: ammeter ** 2 + digit ** 2 + unknownMeter ** 2 + guessed ** 2,
       volts,
@@ -137,7 +148,7 @@ export class Looks {
       return {
         memory: 'volts',
         residual: (sample) => y - at(sample) + meter(sample),
-        sharedSd: LIVE_SPREADS.modelVolts,
+        sharedSd: this.modelSd(observation, circuit),
         kept: since.keptVolts,
         ownVariance,
       };

@@ -2,10 +2,10 @@ import { slopeAtSoc, voltsAtSoc } from '../curve/ocv';
 import type { PlanModel } from '../plan/plan-model';
 import { SAMPLE_AXES } from '../plan/samples';
 import { LIVE_SPREADS } from './live-spreads';
-import { isFull, type Looks, type Since } from './looks';
+import { isFull, type Looks, type TerminalLook } from './looks';
 import type { Circuit, Observation } from './observations';
 import { ODD_OFF, type OddLook } from './odd-run';
-import type { ParticleSet } from './particle-set';
+import type { Look, ParticleSet } from './particle-set';
 
 /** From one reading to the next the model's error may move by this share of itself beside what it forgets. */
 const JUMP_SHARE = 0.5;
@@ -15,17 +15,18 @@ const JUMP_OFF = 6;
 const FULL_SHARE = 0.97;
 const TEMPERATURE = SAMPLE_AXES.indexOf('temperature');
 
-/** The voltage between the clips: null where it is not read, or as it should be. */
+/** How far the voltage between the clips is off. */
+export const offOfVolts = (set: ParticleSet, looks: Looks, look: Look, at: Observation, circuit: Circuit) =>
+  set.offOf(look, JUMP_SHARE * looks.modelSd(at, circuit));
+
+/** The voltage between the clips: null where it is as it should be. */
 export function oddVolts(
   set: ParticleSet,
-  looks: Looks,
+  look: TerminalLook,
+  { level, jump }: ReturnType<ParticleSet['offOf']>,
   at: Observation,
   circuit: Circuit,
-  since: Since,
 ): OddLook | null {
-  const look = looks.terminal(at, circuit, since);
-  if (look === null) return null;
-  const { level, jump } = set.offOf(look, JUMP_SHARE * LIVE_SPREADS.modelVolts);
   const jumped = jump !== null && Math.abs(jump) >= JUMP_OFF;
   if (Math.abs(level) < ODD_OFF && !jumped) return null;
   const up = (jumped ? jump : level) * circuit.lane.sign > 0;

@@ -27,7 +27,7 @@ export interface Look {
   residual: (sample: Sample) => number;
   /** Where it is not known which of two things was read: what was read less the other; both are as likely. */
   otherResidual?: (sample: Sample) => number;
-  /** Of what the readings share, standard deviation. */
+  /** What one standard deviation of the error that the readings share makes here. */
   sharedSd: number;
   /** Share of it that is left since the last reading of the kind. */
   kept: number;
@@ -50,6 +50,11 @@ export class ParticleSet {
   private readonly variance = [NaN, NaN, NaN, NaN];
   private readonly axes: number[];
   private readonly random: () => number;
+  /** Room for one number of each sample. */
+  private readonly values: Float64Array;
+  private readonly prior: Float64Array;
+  private readonly off: Float64Array;
+  private readonly log: Float64Array;
   /** Any reading was taken in. */
   read = false;
 
@@ -61,31 +66,38 @@ export class ParticleSet {
     this.samples = liveDraws(count, seed).map((draws) => liveSample(model, draws));
     this.weights = new Float64Array(count).fill(1 / count);
     this.memory = new Float64Array(count * MEMORY_COUNT);
+    this.values = new Float64Array(count);
+    this.prior = new Float64Array(count);
+    this.off = new Float64Array(count);
+    this.log = new Float64Array(count);
     this.axes = readAxes(model);
     this.random = seededRandom(seed + 1);
   }
 
   /** Mean and variance of a number over the samples. */
   moments(of: (sample: Sample, at: number) => number): { mean: number; variance: number } {
-    const values = this.samples.map(of);
+    const { samples, weights, count, values } = this;
     let mean = 0;
-    for (let at = 0; at < this.count; at += 1) mean += this.weights[at]! * values[at]!;
+    for (let at = 0; at < count; at += 1) {
+      values[at] = of(samples[at]!, at);
+      mean += weights[at]! * values[at]!;
+    }
     let variance = 0;
-    for (let at = 0; at < this.count; at += 1) variance += this.weights[at]! * (values[at]! - mean) ** 2;
+    for (let at = 0; at < count; at += 1) variance += weights[at]! * (values[at]! - mean) ** 2;
     return { mean, variance };
   }
 
-  /** Of the shared error now: what one sample has for it, and the variance about that. */
+  /** Of the shared error now, in standard deviations: what one sample has for it, and the variance about that. */
   sharedOf(memory: Memory, at: number): { mean: number; variance: number | null } {
     const column = MEMORIES[memory];
     const variance = this.variance[column]!;
     return { mean: this.memory[at * MEMORY_COUNT + column]!, variance: Number.isNaN(variance) ? null : variance };
   }
 
-  /** Variance of the shared error before a look. */
-  private before({ memory, sharedSd, kept }: Look): number {
+  /** Variance of the shared error before a look, of the whole of it. */
+  private before({ memory, kept }: Look): number {
     const known = this.variance[MEMORIES[memory]]!;
-    return Number.isNaN(known) ? sharedSd ** 2 : kept ** 2 * known + sharedSd ** 2 * (1 - kept ** 2);
+    return Number.isNaN(known) ? 1 : kept ** 2 * known + 1 - kept ** 2;
   }
 
   /**
@@ -98,8 +110,10 @@ export class ParticleSet {
     const level = this.moments(nearer);
     const whole = Math.sqrt(level.variance + look.sharedSd ** 2 + look.ownVariance);
     if (Number.isNaN(this.variance[column]!)) return { level: level.mean / whole, jump: null };
-    const step = this.moments((sample, at) => nearer(sample) - look.kept * this.memory[at * MEMORY_COUNT + column]!);
-    const small = Math.sqrt(step.variance + this.before(look) + look.ownVariance + jumpSd ** 2);
+    const step = this.moments(
+      (sample, at) => nearer(sample) - look.sharedSd * look.kept * this.memory[at * MEMORY_COUNT + column]!,
+    );
+    const small = Math.sqrt(step.variance + look.sharedSd ** 2 * this.before(look) + look.ownVariance + jumpSd ** 2);
     return { level: level.mean / whole, jump: step.mean / small };
   }
 
@@ -115,66 +129,87 @@ export class ParticleSet {
     this.read = true;
     const column = MEMORIES[look.memory];
     const before = this.before(look);
-    const variance = before + look.ownVariance;
+    const variance = look.sharedSd ** 2 * before + look.ownVariance;
     let left = 1;
-    let offs = this.offs(look);
+    this.lookAt(look, variance);
     for (let part = 0; left > 0; part += 1) {
-      const log = offs.map(({ log: one }) => one / variance);
-      const share = part === MOST_PARTS ? left : this.bearable(log, left);
-      this.reweigh(log, share);
+      const share = part === MOST_PARTS ? left : this.bearable(left);
+      this.reweigh(share);
       left -= share;
       if (effectiveSampleSize(this.weights) <= LEAST_SHARE * this.count * 1.001) {
         this.resample();
-        offs = this.offs(look);
+        this.lookAt(look, variance);
       }
     }
-    const gain = before / variance;
+    const gain = (look.sharedSd * before) / variance;
     for (let at = 0; at < this.count; at += 1)
-      this.memory[at * MEMORY_COUNT + column] = offs[at]!.prior + gain * offs[at]!.off;
-    this.variance[column] = (1 - gain) * before;
+      this.memory[at * MEMORY_COUNT + column] = this.prior[at]! + gain * this.off[at]!;
+    this.variance[column] = (1 - gain * look.sharedSd) * before;
   }
 
-  /** Of each sample: what it expects of the shared error, how far off the look is then, and −½ of its square. */
-  private offs(look: Look): { prior: number; off: number; log: number }[] {
+  /** Of each sample: what it expects of the shared error, how far off the look is then, and the logarithm of its likelihood. */
+  private lookAt(look: Look, variance: number): void {
     const column = MEMORIES[look.memory];
-    const variance = this.before(look) + look.ownVariance;
     const known = !Number.isNaN(this.variance[column]!);
-    return this.samples.map((sample, at) => {
+    const { residual, otherResidual } = look;
+    for (let at = 0; at < this.count; at += 1) {
+      const sample = this.samples[at]!;
       const prior = known ? look.kept * this.memory[at * MEMORY_COUNT + column]! : 0;
-      const off = look.residual(sample) - prior;
-      if (!look.otherResidual) return { prior, off, log: -0.5 * off * off };
-      const other = look.otherResidual(sample) - prior;
+      this.prior[at] = prior;
+      const off = residual(sample) - look.sharedSd * prior;
+      if (!otherResidual) {
+        this.off[at] = off;
+        this.log[at] = (-0.5 * off * off) / variance;
+        continue;
+      }
+      const other = otherResidual(sample) - look.sharedSd * prior;
       const [near, far] = Math.abs(off) <= Math.abs(other) ? [off, other] : [other, off];
       const ratio = Math.exp((-0.5 * (far * far - near * near)) / variance);
-      const log = -0.5 * near * near + variance * Math.log((1 + ratio) / 2);
-      return { prior, off: (near + ratio * far) / (1 + ratio), log };
-    });
+      this.off[at] = (near + ratio * far) / (1 + ratio);
+      this.log[at] = (-0.5 * near * near) / variance + Math.log((1 + ratio) / 2);
+    }
   }
 
   /** The largest share of what is left of a look that keeps half the samples effective. */
-  private bearable(log: readonly number[], left: number): number {
-    const sizeAfter = (share: number): number => effectiveSampleSize(this.weighed(log, share));
+  private bearable(left: number): number {
     const least = LEAST_SHARE * this.count;
-    if (sizeAfter(left) >= least) return left;
+    if (this.sizeAfter(left) >= least) return left;
     let low = 0;
     let high = left;
-    for (let pass = 0; pass < 20; pass += 1) {
+    for (let pass = 0; pass < 12; pass += 1) {
       const middle = (low + high) / 2;
-      if (sizeAfter(middle) >= least) low = middle;
+      if (this.sizeAfter(middle) >= least) low = middle;
       else high = middle;
     }
-    return Math.max(high, 1e-6);
+    return high;
   }
 
-  private weighed(log: readonly number[], share: number): Float64Array {
-    const most = log.reduce((best, one) => Math.max(best, one), -Infinity);
-    return this.weights.map((weight, at) => weight * Math.exp(share * (log[at]! - most)));
+  private most(): number {
+    let most = -Infinity;
+    for (let at = 0; at < this.count; at += 1) if (this.log[at]! > most) most = this.log[at]!;
+    return most;
   }
 
-  private reweigh(log: readonly number[], share: number): void {
-    const next = this.weighed(log, share);
-    const sum = next.reduce((total, one) => total + one, 0);
-    for (let at = 0; at < this.count; at += 1) this.weights[at] = next[at]! / sum;
+  private sizeAfter(share: number): number {
+    const most = this.most();
+    let sum = 0;
+    let squares = 0;
+    for (let at = 0; at < this.count; at += 1) {
+      const weight = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
+      sum += weight;
+      squares += weight * weight;
+    }
+    return (sum * sum) / squares;
+  }
+
+  private reweigh(share: number): void {
+    const most = this.most();
+    let sum = 0;
+    for (let at = 0; at < this.count; at += 1) {
+      this.weights[at] = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
+      sum += this.weights[at]!;
+    }
+    for (let at = 0; at < this.count; at += 1) this.weights[at] = this.weights[at]! / sum;
   }
 
   private resample(): void {

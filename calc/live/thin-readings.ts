@@ -9,11 +9,11 @@ export interface KeptReading extends LaneReading {
 }
 
 /** Up to so many are all kept. */
-const ALL_BELOW = 48;
+const ALL_BELOW = 32;
 /** Of more the last ones are kept, in which a fault shows first. */
-const LAST_KEPT = 12;
+const LAST_KEPT = 8;
 /** The earlier ones in so many windows at most. */
-const WINDOWS = 24;
+const WINDOWS = 20;
 /** Shortest window, s; longer ones are twice as long, and so on. */
 const SHORTEST_WINDOW_S = 60;
 /** Readings that differ by more than this from the one before are both kept. */
@@ -24,8 +24,8 @@ const JUMP_VOLTS = 0.02;
 /**
  * The readings that a reckoning goes through, in the order of time whatever the order they came in.
  *
- * Of up to 48 it is all. Of more the last twelve stay, and of the earlier ones the last in each window (of 60, 120, 240 … s, at
- * most 24 windows), both sides of every jump, and the first: readings close together share the error of the model, so that more
+ * Of up to 32 it is all. Of more the last eight stay, and of the earlier ones the last in each window (of 60, 120, 240 … s, at
+ * most 20 windows), both sides of every jump, and the first: readings close together share the error of the model, so that more
  * of them say little more. No charge is lost: each kept reading brings the trapezium over all that were left out before it.
  */
 export function thinReadings(readings: readonly LiveReading[], nowS: number): KeptReading[] {

@@ -49,9 +49,7 @@ export function sampleRun(input: SampleRunInput): SampleRun {
     const asSet =
       source.setVolts === null
         ? null
-        : source.setVolts +
-          count * (sample.curveShiftVolts - (sample.overShiftVolts ?? 0)) +
-          input.chargerSd * sample.chargerDraw;
+        : source.setVolts + count * sample.curveShiftVolts + input.chargerSd * sample.chargerDraw;
     const startAmps = input.startAmps ?? null;
     const law: CurrentLaw = {
       openVolts: (ampHours) => stringVolts(string, ampHours),

@@ -60,8 +60,6 @@ export interface Sample {
   curveShiftVolts: number;
   /** Standard deviations that a charger's own voltmeter is off. */
   chargerDraw: number;
-  /** What the module stands higher under current than the model has it, V per group; left out: 0. */
-  overShiftVolts?: number;
   /** The draws behind it, one per axis, for the shares of the doubts; a running charge adds its own after them. */
   draws: number[];
 }
