@@ -190,6 +190,7 @@ function plainCourse(input: StepInput): Course | null {
   if (whole.outcome === 'unreachable' || whole.outcome === 'time-cap') return null;
   let last: { s: number; state: CellGroup[] } = { s: 0, state: input.groups };
   const stepTo = (s: number): StepResult => {
+    if (s < last.s) last = { s: 0, state: input.groups };
     const result = chargeThroughTerminals({
       ...input,
       groups: last.state,
