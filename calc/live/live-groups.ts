@@ -1,7 +1,7 @@
 import type { Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
 import type { LivePast, LiveRound } from './live-rounds';
-import { restVolts, type ModuleState } from './module-state';
+import { restVolts } from './module-state';
 import type { KeptReading } from './thin-readings';
 import { socsOf, withSeenDifferences } from './rest-readings';
 

@@ -93,12 +93,14 @@ export function drawSamples(basis: SampleBasis, count: number, seed: number): Sa
 
 /** The axes in the order of `Sample.draws`. */
 export const SAMPLE_AXES: readonly Axis[] = AXES;
+const PLACE = Object.fromEntries(AXES.map((axis, at) => [axis, at])) as Record<Axis, number>;
 
 /** The module of one set of standard normal draws, in the order of `SAMPLE_AXES`. */
 export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
   const { spreads, curve } = basis;
-  const normal = (axis: Axis): number => draws[AXES.indexOf(axis)]!;
-  const even = (axis: Axis): number => 2 * normalCdf(normal(axis)) - 1;
+  const normal = (axis: Axis): number => draws[PLACE[axis]]!;
+  const hysteresis = (axis: Axis): number =>
+    spreads.hysteresisVolts === 0 ? 0 : spreads.hysteresisVolts * (2 * normalCdf(normal(axis)) - 1);
   const capacityFactor = Math.exp(spreads.capacityRelative * normal('capacity'));
   const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * normal('temperature')));
   const resistanceFactor =
@@ -111,12 +113,9 @@ export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
     curveShift +
     spareMeter +
     (spreads.readingVolts * normal('spare-scatter')) / Math.sqrt(basis.readVolts.length) +
-    spreads.hysteresisVolts * even('spare-hysteresis');
+    hysteresis('spare-hysteresis');
   const targetShiftVolts =
-    curveShift +
-    targetMeter +
-    spreads.targetVolts * normal('target-scatter') +
-    spreads.hysteresisVolts * even('target-hysteresis');
+    curveShift + targetMeter + spreads.targetVolts * normal('target-scatter') + hysteresis('target-hysteresis');
   const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * normal('self-discharge'));
   return {
     startSoc: basis.readVolts.map((volts) => socOf(curve, volts + spareShift) - lost),

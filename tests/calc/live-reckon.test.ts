@@ -166,9 +166,10 @@ describe('a running charge and its readings', () => {
     const width = (share: number, withVolts: boolean): number => {
       const times = Array.from({ length: 9 }, (_, k) => ((k + 1) / 9) * share * NOMINAL_S);
       const readings = times.map((s) => {
-        // 10 A for so long, and 20 mV a group over the long resistance of 2 mohm once it has built up.
+        // 10 A for so long, and over the long resistance of 2 mohm, 1/2.7 of it at once and the rest with 300 s, 20 mV a group.
         const rest = voltsAtSoc(curve, socAtVolts(curve, 3.75) + s / 360 / 66);
-        return at(s, { amps: 10, terminalVolts: withVolts ? 2 * (rest + 0.02) : null });
+        const overVolts = 0.02 * (1 - (1 - 1 / 2.7) * Math.exp(-s / 300));
+        return at(s, { amps: 10, terminalVolts: withVolts ? 2 * (rest + overVolts) : null });
       });
       const { readyS } = reckon(over, { nowS: share * NOMINAL_S, readings });
       return readyS.p90 - readyS.p10;
