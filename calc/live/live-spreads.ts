@@ -11,7 +11,7 @@ export const LIVE_SPREADS = {
    * of one hour say little more of the module than a few. One RC pair for the many of a cell: measured tapers grow slower by
    * half and more on their way.
    */
-  modelRelative: 0.07,
+  modelRelative: 0.06,
   /** And beside it, V a group: the curve's shape between its points. */
   modelVolts: 0.001,
   /** The model's error forgets itself over this much charge, as a share of the capacity: the width of a hump of a curve. */

@@ -43,7 +43,7 @@ export interface Look {
  * share. A hundred readings that share an error are therefore worth little more than one.
  */
 export class ParticleSet {
-  samples: Sample[];
+  readonly samples: Sample[];
   readonly weights: Float64Array;
   /** What the shared errors are likely to be, one a kind and sample. */
   private memory: Float64Array;
@@ -214,32 +214,35 @@ export class ParticleSet {
 
   private resample(): void {
     const { axes, count, weights } = this;
-    const size = axes.length + MEMORY_COUNT;
+    // Errors that nothing was read of yet are the same in all.
+    const columns = this.variance.flatMap((one, column) => (Number.isNaN(one) ? [] : [column]));
+    const size = axes.length + columns.length;
     const rows = new Float64Array(count * size);
     const mean = new Float64Array(size);
-    this.samples.forEach(({ draws }, at) => {
+    for (let at = 0; at < count; at += 1) {
+      const { draws } = this.samples[at]!;
       for (let k = 0; k < size; k += 1) {
-        const value = k < axes.length ? draws[axes[k]!]! : this.memory[at * MEMORY_COUNT + (k - axes.length)]!;
+        const value = k < axes.length ? draws[axes[k]!]! : this.memory[at * MEMORY_COUNT + columns[k - axes.length]!]!;
         rows[at * size + k] = value;
-        mean[k] = mean[k]! + weights[at]! * value;
+        mean[k]! += weights[at]! * value;
       }
-    });
+    }
     const lower = choleskyLower(covariance(rows, mean, weights, size), size);
     const picked = systematicResample(weights, this.random());
     const memory = new Float64Array(count * MEMORY_COUNT);
     const noise = new Float64Array(size);
-    this.samples = this.samples.map((own, at) => {
-      const from = picked[at]!;
-      for (let k = 0; k < size; k += 1) noise[k] = inverseNormal(Math.max(1e-12, this.random()));
-      const draws = [...own.draws];
+    for (let at = 0; at < count; at += 1) {
+      const from = picked[at]! * size;
+      for (let k = 0; k < size; k += 1) noise[k] = JITTER * inverseNormal(Math.max(1e-12, this.random()));
+      const draws = this.samples[at]!.draws.slice();
       for (let k = 0; k < size; k += 1) {
-        let value = mean[k]! + SHRINK * (rows[from * size + k]! - mean[k]!);
-        for (let j = 0; j <= k; j += 1) value += JITTER * lower[k * size + j]! * noise[j]!;
+        let value = mean[k]! + SHRINK * (rows[from + k]! - mean[k]!);
+        for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * noise[j]!;
         if (k < axes.length) draws[axes[k]!] = value;
-        else memory[at * MEMORY_COUNT + (k - axes.length)] = value;
+        else memory[at * MEMORY_COUNT + columns[k - axes.length]!] = value;
       }
-      return liveSample(this.model, draws);
-    });
+      this.samples[at] = liveSample(this.model, draws);
+    }
     this.memory = memory;
     weights.fill(1 / count);
   }
