@@ -43,6 +43,8 @@ export interface Lane {
   moved: (state: ModuleState, fromAmps: number, toAmps: number, seconds: number) => ModuleState;
   /** Volts between the clips. */
   clipVolts: (state: ModuleState, amps: number) => number;
+  /** Within reach of its end at these amps: there only a run of the model says whether it has ended. */
+  isNearEnd: (state: ModuleState, amps: number) => boolean;
   /** Whether a reading between the clips says that the set voltage rules. */
   atSetVolts: (terminalVolts: number, amps: number) => boolean;
   /** Drive that explains a reading in the taper. */

@@ -1,7 +1,7 @@
-import type { PlanModel } from '../plan/plan-model';
 import type { Sample } from '../plan/samples';
 import { AS_SET, type Drive } from './lane';
 import { liveSampleRun, type MovedIn } from './live-samples';
+import type { LiveModel } from './live-model';
 import { livePast, type LivePast, type LiveRound, type ReplayInput } from './live-rounds';
 import type { ModuleState } from './module-state';
 
@@ -30,11 +30,11 @@ export interface Ahead {
 }
 
 /** What is still to come of a charge: the rest of the running round by the core from its present state, then the planned ones. */
-export function liveAhead(model: PlanModel, input: ReplayInput, past: LivePast): Ahead {
+export function liveAhead(model: LiveModel, input: ReplayInput, past: LivePast): Ahead {
   const { option } = input;
   const current = past.begun[past.begun.length - 1];
   const ahead: Ahead = { rounds: [], endState: past.state, ampHours: 0 };
-  let moved = movedAlike(model, past.movedAh);
+  let moved = movedSoFar(model, past);
   const begun = past.begun.length;
   if (current && current.endedAtS === null) {
     const left = restOfRound(model, input, past, current);
@@ -67,13 +67,16 @@ export function liveAhead(model: PlanModel, input: ReplayInput, past: LivePast):
 }
 
 /**
- * Samples advanced from the present state: what has been passed is passed in every sample, and a doubt of the capacity counts for
- * what is still to come only.
+ * Charge that has passed: that of the readings, in every sample the same. Where nothing has been read, a round that is over has
+ * done in every sample what it was to do there.
  */
-const movedAlike =
-  (model: PlanModel, movedAh: readonly number[]): MovedIn =>
-  (sample, group) =>
-    movedAh[group]! * (sample.capacityAh[group]! / model.nominal.capacityAh[group]!);
+function movedSoFar(model: LiveModel, past: LivePast, movedAh: readonly number[] = past.movedAh): MovedIn {
+  if (model.weights !== null) return (_, group) => movedAh[group]!;
+  const current = past.begun[past.begun.length - 1];
+  const done = current === undefined || current.endedAtS !== null ? movedAh : current.movedBeforeAh;
+  return (sample, group) =>
+    done[group]! * (sample.capacityAh[group]! / model.nominal.capacityAh[group]!) + movedAh[group]! - done[group]!;
+}
 
 interface RestOfRound {
   lanes: LaneAhead[];
@@ -82,11 +85,11 @@ interface RestOfRound {
   moved: MovedIn;
 }
 
-function restOfRound(model: PlanModel, input: ReplayInput, past: LivePast, round: LiveRound): RestOfRound {
+function restOfRound(model: LiveModel, input: ReplayInput, past: LivePast, round: LiveRound): RestOfRound {
   const soc = [...past.state.soc];
   const over = [...past.state.over];
   let ampHours = 0;
-  let after = movedAlike(model, past.movedAh);
+  let after = movedSoFar(model, past);
   const lanes = round.lanes.map((lane, at): LaneAhead => {
     const one = round.pasts[at]!;
     if (one.endedAtS !== null || one.overrun)
@@ -108,9 +111,8 @@ function restOfRound(model: PlanModel, input: ReplayInput, past: LivePast, round
     // Levelling passes charge from group to group: nothing comes in.
     const counts = lane.step.kind !== 'pre-level';
     after = (sample, group) =>
-      since.elapsedS === 0
-        ? before(sample, group) +
-          (counts && lane.step.groupIndexes.includes(group) ? lane.sign * run(sample).ampHours : 0)
+      counts && lane.step.groupIndexes.includes(group)
+        ? since.moved(sample, group) + lane.sign * run(sample).ampHours
         : before(sample, group);
     return {
       stepIndex: lane.index,
@@ -126,24 +128,24 @@ function restOfRound(model: PlanModel, input: ReplayInput, past: LivePast, round
 }
 
 /**
- * From where a lane's samples run: from the present state; in a taper that nobody has read yet from where it began, as each
- * sample's current has gone its own way since.
+ * From where a lane's samples run: from the present state; where nobody has read the current of this round yet from its start,
+ * and in a taper that nobody has read from where it began, as each sample's current has gone its own way since.
  */
 function sampledSince(
-  model: PlanModel,
+  model: LiveModel,
   input: ReplayInput,
   past: LivePast,
   round: LiveRound,
   at: number,
 ): { moved: MovedIn; elapsedS: number } {
   const one = round.pasts[at]!;
-  const here = { moved: movedAlike(model, past.movedAh), elapsedS: 0 };
-  const taperAtS = one.taperAtS;
-  if (taperAtS === null || one.drive.seenInTaper || round.lanes[at]!.step.channelIds.length === 0) return here;
-  const elapsedS = round.stretches.reduce(
-    (sum, { fromS, toS }) => sum + Math.max(0, toS - Math.max(fromS, taperAtS)),
-    0,
-  );
+  const here = { moved: movedSoFar(model, past), elapsedS: 0 };
+  if (one.drive.seenInTaper || round.lanes[at]!.step.channelIds.length === 0) return here;
+  const unread = one.drive.maxAmps === null && !one.noCurrent;
+  const sinceS = unread ? -Infinity : one.taperAtS;
+  if (sinceS === null) return here;
+  const elapsedS = round.stretches.reduce((sum, { fromS, toS }) => sum + Math.max(0, toS - Math.max(fromS, sinceS)), 0);
   if (elapsedS <= 0) return here;
-  return { moved: movedAlike(model, livePast(model, input, taperAtS).movedAh), elapsedS };
+  const movedAh = unread ? round.movedBeforeAh : livePast(model, input, sinceS).movedAh;
+  return { moved: movedSoFar(model, past, movedAh), elapsedS };
 }

@@ -1,12 +1,21 @@
 import type { ReckonInput } from '../live-types';
 import type { PlanInput, PlannedStep } from '../plan-types';
 import { planModel, type PlanModel } from '../plan/plan-model';
+import type { Sample } from '../plan/samples';
 import type { Lane } from './lane';
 import { resistorLane } from './resistor-lane';
 import { seriesLane } from './series-lane';
 
 /** Steps that begin within this of each other are begun by the same hand, s. */
 const TOGETHER_S = 1;
+
+/** The module as the readings have it. */
+export interface LiveModel extends PlanModel {
+  /** Of the samples; null: all alike. */
+  weights: Float64Array | null;
+  /** The nominal module of the plan. */
+  planned: Sample;
+}
 
 /** The module and its samples as the charge was planned with. */
 export function liveModel(input: ReckonInput): PlanModel {

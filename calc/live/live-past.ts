@@ -1,4 +1,3 @@
-import type { LiveReading } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
 import { AS_SET, type Drive, type Lane } from './lane';
 import { rested, type ModuleState } from './module-state';
@@ -9,11 +8,34 @@ export interface Stretch {
   toS: number;
 }
 
-/** Readings of the current on one lane, positive amps. */
-export interface AmpsReading {
+/** A reading as one lane sees it, positive amps; null: the current was not read. */
+export interface LaneReading {
+  /** Among the readings of the charge. */
+  index: number;
   s: number;
-  amps: number;
+  amps: number | null;
   terminalVolts: number | null;
+  /** Ampere-seconds since the reading before, where more were read between the two than are kept. */
+  ampSeconds?: number;
+}
+
+type AmpsReading = LaneReading & { amps: number };
+
+/** One lane at the instant of a reading, after it was taken in. */
+export interface Knot {
+  index: number;
+  state: ModuleState;
+  deliveredAh: number;
+  /** As read, else by the model; positive. */
+  amps: number;
+  /** What the source would give as set, at that state; positive. */
+  dueAmps: number;
+  /** A voltage limit rules. */
+  tapering: boolean;
+  /** No current was read while some was due. */
+  noCurrent: boolean;
+  /** The current is over. */
+  over: boolean;
 }
 
 export interface LanePast {
@@ -31,6 +53,10 @@ export interface LanePast {
   noCurrent: boolean;
   /** The last reading showed current after the reckoned end. */
   overrun: boolean;
+  /** One for each reading of its stretches. */
+  knots: Knot[];
+  /** When the last current ended, or now. */
+  endState: ModuleState;
 }
 
 /** Below this share of the set current, or of the planned end current, a reading says that none flows. */
@@ -54,7 +80,7 @@ export function lanePast(
   lane: Lane,
   start: ModuleState,
   stretches: Stretch[],
-  readings: AmpsReading[],
+  readings: LaneReading[],
   nowS: number,
   saidOff = false,
 ): LanePast {
@@ -67,6 +93,8 @@ export function lanePast(
     drive: AS_SET,
     noCurrent: false,
     overrun: false,
+    knots: [],
+    endState: start,
   };
   for (const { fromS, toS } of stretches) {
     const endS = Math.min(toS, nowS);
@@ -75,17 +103,86 @@ export function lanePast(
     past.noCurrent = false;
     let before: number | null = null;
     for (const reading of readings.filter(({ s }) => s >= fromS && s <= endS)) {
-      takeReading(model, lane, past, before, reading);
-      before = reading.amps;
+      if (isAmpsReading(reading)) {
+        if (!glide(lane, past, before, reading)) takeReading(model, lane, past, before, reading);
+        before = reading.amps;
+        past.knots.push(knotOf(lane, past, reading, past.state));
+      } else {
+        const seen = peek(model, lane, past, reading.s);
+        past.knots.push(knotOf(lane, past, reading, seen.state, seen));
+      }
     }
     runOn(model, lane, past, endS, saidOff && toS === stretches[stretches.length - 1]!.toS);
   }
+  if (past.endedAtS === null) past.endState = past.state;
   past.state = restTouched(model, lane, past.state, nowS);
   return past;
 }
 
 const restTouched = (model: PlanModel, lane: Lane, state: ModuleState, toS: number): ModuleState =>
   rested(model, state, toS, lane.touched);
+
+const isAmpsReading = (reading: LaneReading): reading is AmpsReading => reading.amps !== null;
+
+/** The state at a reading without amps, which changes nothing, and the charge since the last one with. */
+function peek(
+  model: PlanModel,
+  lane: Lane,
+  past: LanePast,
+  s: number,
+): { state: ModuleState; ampHours: number; over: boolean } {
+  const rests = past.noCurrent || past.endedAtS !== null;
+  if (rests) return { state: restTouched(model, lane, past.state, s), ampHours: 0, over: past.endedAtS !== null };
+  const ahead = lane.forward(past.state, past.drive, Math.max(0, s - past.state.s), past.overrun);
+  return { state: restTouched(model, lane, ahead.state, s), ampHours: ahead.ampHours, over: ahead.ended };
+}
+
+function knotOf(
+  lane: Lane,
+  past: LanePast,
+  reading: LaneReading,
+  state: ModuleState,
+  ahead = { ampHours: 0, over: past.endedAtS !== null },
+): Knot {
+  const { over } = ahead;
+  return {
+    index: reading.index,
+    state,
+    deliveredAh: past.deliveredAh + ahead.ampHours,
+    amps: past.noCurrent || over ? 0 : (reading.amps ?? lane.ampsAt(state, past.drive)),
+    dueAmps: lane.ampsAt(state, AS_SET),
+    tapering: past.taperAtS !== null,
+    noCurrent: past.noCurrent && !over,
+    over,
+  };
+}
+
+/**
+ * The usual reading, far from the end: more of the same since the one before. Gives what `takeReading` gives there, without a
+ * run of the model.
+ */
+function glide(lane: Lane, past: LanePast, before: number | null, reading: AmpsReading): boolean {
+  const { setAmps } = lane.step;
+  const { amps } = reading;
+  if (before === null || setAmps === null || past.endedAtS !== null || past.overrun || past.noCurrent) return false;
+  if (amps <= zeroBelow(lane) || amps <= lane.trickleAmps) return false;
+  const seconds = reading.s - past.state.s;
+  if (!(seconds > 0)) return false;
+  const from = fromAmps(reading, before, seconds);
+  const state = lane.moved(past.state, from, amps, seconds);
+  if (lane.isNearEnd(state, amps)) return false;
+  const limited = lane.ampsAt(state, past.drive) < Math.min(past.drive.maxAmps ?? setAmps, setAmps) * (1 - 1e-9);
+  if (past.taperAtS === null && (limited || lane.ampsAt(state, AS_SET) < setAmps * CONSTANT_SHARE)) return false;
+  past.deliveredAh += ((from + amps) / 2) * (seconds / 3600);
+  past.state = state;
+  past.amps = amps;
+  past.drive = driveFrom(lane, past, reading);
+  return true;
+}
+
+/** Amps from which a straight line to the reading's own has the charge that has passed. */
+const fromAmps = ({ amps, ampSeconds }: AmpsReading, before: number, seconds: number): number =>
+  ampSeconds === undefined ? before : (2 * ampSeconds) / seconds - amps;
 
 function takeReading(model: PlanModel, lane: Lane, past: LanePast, before: number | null, reading: AmpsReading): void {
   const { s, amps } = reading;
@@ -110,7 +207,7 @@ function takeReading(model: PlanModel, lane: Lane, past: LanePast, before: numbe
     note(past, ahead.taperAfterS, ahead.ampHours);
     past.state = ahead.state;
   } else {
-    const from = before ?? amps;
+    const from = before === null || seconds <= 0 ? amps : fromAmps(reading, before, seconds);
     const constantS = tapering && amps < from ? ahead.taperAfterS! : 0;
     if (tapering) past.taperAtS ??= past.state.s + ahead.taperAfterS!;
     advance(lane, past, from, from, constantS);
@@ -127,6 +224,7 @@ function takeReading(model: PlanModel, lane: Lane, past: LanePast, before: numbe
   const there = lane.forward(past.state, past.drive, 0).ended;
   past.overrun = there && !trickle;
   past.endedAtS = there && trickle ? (past.endedAtS ?? s) : null;
+  if (past.endedAtS === s) past.endState = past.state;
 }
 
 /** The model from the last reading (or the start) of a stretch to its end. */
@@ -159,6 +257,7 @@ function end(
   taperAfterS: number | null,
 ): void {
   past.endedAtS = past.state.s + seconds;
+  past.endState = state;
   note(past, taperAfterS, ampHours);
   past.state = state;
   past.amps = 0;
@@ -195,8 +294,11 @@ function zeroBelow({ step }: Lane): number {
 const logMean = (first: number, second: number): number =>
   Math.abs(first - second) < 1e-9 * first ? first : (first - second) / Math.log(first / second);
 
-/** Readings with amps, as one lane of `shareOf` the current sees them. */
-export const ampsReadings = (readings: readonly LiveReading[], shareOf: number, alone: boolean): AmpsReading[] =>
-  readings.flatMap(({ s, amps, terminalVolts }) =>
-    amps === null ? [] : [{ s, amps: Math.abs(amps) * shareOf, terminalVolts: alone ? terminalVolts : null }],
-  );
+/** Readings as one lane of `shareOf` the current sees them. */
+export const laneReadings = (readings: readonly LaneReading[], shareOf: number, alone: boolean): LaneReading[] =>
+  readings.map((reading) => ({
+    ...reading,
+    amps: reading.amps === null ? null : Math.abs(reading.amps) * shareOf,
+    terminalVolts: alone ? reading.terminalVolts : null,
+    ...(reading.ampSeconds === undefined ? {} : { ampSeconds: reading.ampSeconds * shareOf }),
+  }));

@@ -1,5 +1,7 @@
 import type { PlannedStep, PlanOption } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
+import { leadOhmOf } from './live-draws';
+import type { LiveModel } from './live-model';
 import { chargerSd, sampleRun, type SampleRun } from '../plan/sample-run';
 import { SAMPLE_AXES, type Sample } from '../plan/samples';
 import { sampleString } from '../plan/series-step';
@@ -8,6 +10,8 @@ import type { Drive } from './lane';
 
 /** Standard deviations between 10 and 90 % of a normal distribution. */
 const NORMAL_80 = 2.563;
+/** A current that was read is the set one within this. */
+const SET_SHARE = 0.05;
 const CAPACITY_AXIS = SAMPLE_AXES.indexOf('capacity');
 
 /** Charge that has gone into a group in a sample, Ah at its terminals; out of it: negative. */
@@ -20,7 +24,7 @@ export type MovedIn = (sample: Sample, group: number) => number;
  * @param ampsNow those amps
  */
 export function liveSampleRun(
-  model: PlanModel,
+  model: LiveModel,
   option: PlanOption,
   step: PlannedStep,
   movedIn: MovedIn,
@@ -41,12 +45,13 @@ export function liveSampleRun(
     : step.groupIndexes.reduce((sum, group) => sum + step.restVoltsAfter[group]!, 0);
   const setVolts = step.setVolts === null ? null : step.setVolts + drive.setShiftVolts;
   const leadResistanceOhm = channel.senses === 'module' ? 0 : channel.leadResistanceOhm;
-  const ohm = leadResistanceOhm + linkOhm + stringIn(model.nominal).ohm;
+  // The current that ends a taper is the plan's, whatever has been learned since.
+  const ohm = leadResistanceOhm + linkOhm + stringIn(model.planned).ohm;
   const onTheMark = isOnTheMark(model, option, step, count, endVolts);
   return sampleRun({
     model,
     source: {
-      maxAmps: drive.maxAmps ?? step.setAmps ?? channel.dischargeAmps,
+      maxAmps: asSetAmps(step, drive) ?? channel.dischargeAmps,
       setVolts,
       maxWatts: channel.maxWatts,
       leadResistanceOhm,
@@ -57,6 +62,7 @@ export function liveSampleRun(
     count,
     linkOhm,
     chargerSd: chargerSd(model, channel, count),
+    leadOhmIn: (sample) => (channel.senses === 'module' ? 0 : leadOhmOf(channel, sample)),
     startAmps: drive.seenInTaper && ampsNow > 0 ? ampsNow : null,
     aimVolts: endVolts,
     first:
@@ -65,6 +71,12 @@ export function liveSampleRun(
     endAmps: onTheMark && step.setVolts !== null ? Math.max((sign * (step.setVolts - endVolts)) / ohm, 1e-4) : null,
     stringIn,
   });
+}
+
+/** The set current where what was read is that one: how far it is off is in the samples; else as read. */
+function asSetAmps(step: PlannedStep, { maxAmps }: Drive): number | null {
+  if (step.setAmps === null || maxAmps === null) return maxAmps ?? step.setAmps;
+  return Math.abs(maxAmps / step.setAmps - 1) <= SET_SHARE ? step.setAmps : maxAmps;
 }
 
 /** Set to its aim, and not above it (a trim of an on-the-mark charge may go over where the mark cannot be held). */

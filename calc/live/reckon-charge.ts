@@ -2,16 +2,22 @@ import type { LiveReading, ReckonInput, Reckoning } from '../live-types';
 import { dominantDoubt } from '../plan/doubt-shares';
 import { minimumRestS } from '../plan/minimum-rest';
 import type { PlanModel } from '../plan/plan-model';
+import { socOf } from '../plan/soc-of';
+import type { Band, PlanOption } from '../plan-types';
 import { quantile } from '../statistics/quantile';
+import { weightedQuantiles } from '../statistics/weighted-quantile';
 import { settleSeconds } from '../step/settle';
 import { expectedAt } from './expected-at';
 import { toGroups } from './live-groups';
 import { liveAhead, type Ahead } from './live-ahead';
-import { liveModel } from './live-model';
-import { livePast, type LivePast, type LiveRound } from './live-rounds';
+import { liveModel, type LiveModel } from './live-model';
+import { livePast, type LivePast, type LiveRound, type ReplayInput } from './live-rounds';
 import { endOf, liveSegments, type AheadClock } from './live-segments';
 import { rested } from './module-state';
-import { lastReadingChance } from './last-reading';
+import { followReadings } from './follow-readings';
+import { learnedModel } from './learned-model';
+import { liveDoubt } from './live-doubt';
+import { thinReadings } from './thin-readings';
 import { restSeen } from './rest-readings';
 
 /**
@@ -29,17 +35,22 @@ import { restSeen } from './rest-readings';
  * @throws CalcInputError for numbers that cannot be
  */
 export function reckonCharge(input: ReckonInput): Reckoning {
-  const model = liveModel(input);
+  const planned = liveModel(input);
   const { nowS, option } = input;
-  const past = livePast(model, input, nowS);
+  const kept = thinReadings(input.readings, nowS);
+  const replay: ReplayInput = { option, runs: input.runs, currentOffAtS: input.currentOffAtS, readings: kept };
+  const asPlanned = livePast(planned, replay, nowS);
+  const followed = followReadings(planned, asPlanned, kept, input.seed);
+  const model = learnedModel(planned, followed, endSoc(planned, option));
+  const past = isNominal(planned, model) ? asPlanned : livePast(model, replay, nowS);
   const over = input.currentOffAtS !== null && input.currentOffAtS <= nowS;
-  const ahead: Ahead = over ? { rounds: [], endState: past.state, ampHours: 0 } : liveAhead(model, input, past);
+  const ahead: Ahead = over ? { rounds: [], endState: past.state, ampHours: 0 } : liveAhead(model, replay, past);
   const current = past.begun[past.begun.length - 1]!;
   const flowsOn = !over && ahead.rounds.length === 1 && isOverrun(current);
 
-  const fixed = fixedClock(model, input, past, ahead, over);
+  const fixed = fixedClock(model, input, replay, past, ahead, over);
   const seconds = model.samples.map((sample) => finishOf(fixed, ahead, (lane) => lane.secondsIn(sample)));
-  const readyS = { p10: quantile(seconds, 0.1), p50: quantile(seconds, 0.5), p90: quantile(seconds, 0.9) };
+  const readyS = bandOf(seconds, model.weights);
   const clock = likelyClock(fixed, ahead, readyS.p50);
   if (fixed.settledAtS !== null) shorten(clock, fixed);
 
@@ -51,9 +62,9 @@ export function reckonCharge(input: ReckonInput): Reckoning {
   const waits = !isResting && current.endedAtS !== null;
   const flowing = current.open && !current.pasts.every((one) => one.noCurrent) && !over;
   const seen = isResting
-    ? restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, input, past, currentEndS, s))
+    ? restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, replay, past, currentEndS, s))
     : null;
-  const groups = toGroups(model, input, past, current, flowing, seen?.restVolts ?? null);
+  const groups = toGroups(model, kept, past, current, flowing, seen?.restVolts ?? null);
   const lane = current.lanes[0]!;
   const amps = flowing ? current.pasts.reduce((sum, one) => sum + (one.endedAtS === null ? one.amps : 0), 0) : 0;
 
@@ -81,10 +92,38 @@ export function reckonCharge(input: ReckonInput): Reckoning {
     segments: liveSegments(past, clock),
     laggingGroup: groups.laggingGroup,
     lagVolts: groups.lagVolts,
-    expected: expectedAt(model, input),
-    dominant: dominantDoubt(model.samples, seconds).dominant,
-    readingChance: lastReadingChance(model, input),
+    expected: expectedAt(planned, replay, nowS),
+    dominant:
+      model.weights === null
+        ? dominantDoubt(model.samples, seconds).dominant
+        : liveDoubt(model.samples, model.weights, seconds),
+    readingChance: followed.chance,
+    odd: followed.odd,
+    learned: followed.learned,
   };
+}
+
+/** Charge that the plan moves, as a share of the capacity, mean of the groups. */
+function endSoc(model: PlanModel, option: PlanOption): number {
+  const after = option.endGroupVolts.map((volts, group) =>
+    Math.abs(socOf(model.curve, volts) - model.startSoc[group]!),
+  );
+  return after.reduce((sum, one) => sum + one, 0) / after.length;
+}
+
+const isNominal = (planned: PlanModel, model: LiveModel): boolean =>
+  planned.groups.every(
+    (group, at) =>
+      group.capacityAh === model.groups[at]!.capacityAh &&
+      group.polarisationResistanceOhm === model.groups[at]!.polarisationResistanceOhm,
+  );
+
+function bandOf(seconds: readonly number[], weights: Float64Array | null): Band {
+  const [p10, p50, p90] =
+    weights === null
+      ? [0.1, 0.5, 0.9].map((share) => quantile(seconds, share))
+      : weightedQuantiles(seconds, weights, [0.1, 0.5, 0.9]);
+  return { p10: p10!, p50: p50!, p90: p90! };
 }
 
 interface FixedClock {
@@ -98,7 +137,14 @@ interface FixedClock {
   settledAtS: number | null;
 }
 
-function fixedClock(model: PlanModel, input: ReckonInput, past: LivePast, ahead: Ahead, over: boolean): FixedClock {
+function fixedClock(
+  model: PlanModel,
+  input: ReckonInput,
+  replay: ReplayInput,
+  past: LivePast,
+  ahead: Ahead,
+  over: boolean,
+): FixedClock {
   const { nowS, option } = input;
   const { workshop } = model.input;
   const current = past.begun[past.begun.length - 1]!;
@@ -108,7 +154,7 @@ function fixedClock(model: PlanModel, input: ReckonInput, past: LivePast, ahead:
       ? Math.min(input.currentOffAtS!, endOf(current) ?? Infinity)
       : (endOf(current) ?? nowS)
     : null;
-  const endState = isOver ? stateBack(model, input, past, currentEndS!, currentEndS!) : ahead.endState;
+  const endState = isOver ? stateBack(model, replay, past, currentEndS!, currentEndS!) : ahead.endState;
   const tau = model.groups.map((group) => group.polarisationTimeConstantS);
   const lastSteps = past.rounds[past.rounds.length - 1]!.length;
   const offS = lastSteps * workshop.clipOffS + (option.busbarsOff ? workshop.busbarsS : 0);
@@ -121,15 +167,15 @@ function fixedClock(model: PlanModel, input: ReckonInput, past: LivePast, ahead:
   const settledAtS =
     currentEndS === null
       ? null
-      : restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, input, past, currentEndS, s))
+      : restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, replay, past, currentEndS, s))
           .settledAtS;
   return { nowS, currentEndS, restS, checkS: workshop.checkS, waitS: 0, settledAtS };
 }
 
 /** The module at an instant of the rest: replayed to the end of current, then at rest. */
-function stateBack(model: PlanModel, input: ReckonInput, past: LivePast, currentEndS: number, s: number) {
+function stateBack(model: PlanModel, replay: ReplayInput, past: LivePast, currentEndS: number, s: number) {
   if (s >= past.state.s) return past.state;
-  const atEnd = livePast(model, input, currentEndS);
+  const atEnd = livePast(model, replay, currentEndS);
   return rested(model, atEnd.state, Math.max(s, currentEndS));
 }
 

@@ -81,6 +81,7 @@ export function resistorLane(model: PlanModel, step: PlannedStep, index: number,
           sign * amps * model.groups[group]!.ohmicResistanceOhm,
         0,
       ),
+    isNearEnd: () => true,
     atSetVolts: () => false,
     // The reading over the plan's amps at that charge, as amps at the start.
     driveInTaper: (state, amps) => ({

@@ -7,9 +7,12 @@ import type { CellGroup, Source } from '../types';
 import type { Drive, Forward, Lane } from './lane';
 import type { ModuleState } from './module-state';
 
-/** On the mark: the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
+/** In other tapers the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
 const END_AMPS_SHARE = 0.98;
 const LEAST_END_AMPS = 1e-3;
+/** Near the end: amps within this many times the planned end current, rest voltage within this of the aim, V a group. */
+const NEAR_END_AMPS = 2;
+const NEAR_END_VOLTS = 0.002;
 /** Times the planned end current that may still flow once on the mark is reached. */
 const TRICKLE = 1.5;
 
@@ -49,6 +52,7 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
   const count = joined ? 1 : step.groupIndexes.length;
   const onTheMark = source.setVolts !== null && Math.abs(source.setVolts - aimVolts) <= model.toleranceVolts * count;
   const tapers = source.setVolts !== null && endsByAmps(step);
+  const byAmps = onTheMark && tapers;
   const forward = (state: ModuleState, drive: Drive, maxSeconds: number | null, onwards = false): Forward => {
     const groups = groupsOf(state);
     const result = chargeThroughTerminals({
@@ -59,9 +63,11 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
       direction: step.direction,
       source: driven(drive),
       stop: {
-        relaxedVolts: onwards ? null : aimVolts,
-        toleranceVolts: onwards ? 0 : 1e-9,
-        cutoffAmps: tapers && !onwards ? Math.max(Math.abs(step.endAmps) * END_AMPS_SHARE, LEAST_END_AMPS) : null,
+        // On the mark people go by the amps; where the module stands then is as well as the charge is known.
+        relaxedVolts: onwards || byAmps ? null : aimVolts,
+        toleranceVolts: onwards || byAmps ? 0 : 1e-9,
+        cutoffAmps:
+          tapers && !onwards ? Math.max(Math.abs(step.endAmps) * (byAmps ? 1 : END_AMPS_SHARE), LEAST_END_AMPS) : null,
         groupVolts: null,
         maxSeconds,
       },
@@ -133,6 +139,13 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
       return (
         electromotive(groups) + sign * amps * groups.reduce((sum, group) => sum + group.ohmicResistanceOhm, linkOhm)
       );
+    },
+    isNearEnd: (state, amps) => {
+      if (tapers && amps < NEAR_END_AMPS * Math.abs(step.endAmps)) return true;
+      const rest = joined
+        ? voltsAtSoc(model.curve, joinedSoc(model, state, step))
+        : step.groupIndexes.reduce((sum, group) => sum + voltsAtSoc(model.curve, state.soc[group]!), 0);
+      return sign * (aimVolts - rest) < NEAR_END_VOLTS * count;
     },
     atSetVolts: (terminalVolts, amps) =>
       source.setVolts !== null &&

@@ -41,6 +41,8 @@ export interface PlanModel {
   markVolts: number;
   nominal: Sample;
   samples: Sample[];
+  /** What the samples were drawn about. */
+  basis: SampleBasis;
   spreads: Spreads;
 }
 
@@ -94,6 +96,7 @@ export function planModel(input: PlanInput): PlanModel {
     markVolts: target.toleranceVolts * ON_THE_MARK_SHARE,
     nominal: drawSamples(basis, 1, input.seed)[0]!,
     samples: drawSamples(basis, input.samples ?? DEFAULT_SAMPLES, input.seed),
+    basis,
     spreads,
   };
 }

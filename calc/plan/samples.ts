@@ -5,6 +5,7 @@ import { socOf } from './soc-of';
 import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { latinHypercube } from '../statistics/latin-hypercube';
+import { normalCdf } from '../statistics/normal-cdf';
 
 /** What one axis of the sample set stands for. */
 const AXES = [
@@ -60,7 +61,7 @@ export interface Sample {
   curveShiftVolts: number;
   /** Standard deviations that a charger's own voltmeter is off. */
   chargerDraw: number;
-  /** The draws behind it, one per axis, for the shares of the doubts. */
+  /** The draws behind it, one per axis, for the shares of the doubts; a running charge adds its own after them. */
   draws: number[];
 }
 
@@ -89,17 +90,20 @@ export interface SampleBasis {
  * the nominal run.
  */
 export function drawSamples(basis: SampleBasis, count: number, seed: number): Sample[] {
-  if (count === 1) return [toSample(basis, new Array<number>(AXES.length).fill(0.5))];
-  return latinHypercube(count, AXES.length, seed).map((point) => toSample(basis, point));
+  if (count === 1) return [sampleOf(basis, new Array<number>(AXES.length).fill(0))];
+  return latinHypercube(count, AXES.length, seed).map((point) => sampleOf(basis, point.map(inverseNormal)));
 }
 
 /** The axes in the order of `Sample.draws`. */
 export const SAMPLE_AXES: readonly Axis[] = AXES;
+const PLACE = Object.fromEntries(AXES.map((axis, at) => [axis, at])) as Record<Axis, number>;
 
-function toSample(basis: SampleBasis, point: readonly number[]): Sample {
+/** The module of one set of standard normal draws, in the order of `SAMPLE_AXES`. */
+export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
   const { spreads, curve } = basis;
-  const normal = (axis: Axis): number => inverseNormal(point[AXES.indexOf(axis)]!);
-  const even = (axis: Axis): number => 2 * point[AXES.indexOf(axis)]! - 1;
+  const normal = (axis: Axis): number => draws[PLACE[axis]]!;
+  const hysteresis = (axis: Axis): number =>
+    spreads.hysteresisVolts === 0 ? 0 : spreads.hysteresisVolts * (2 * normalCdf(normal(axis)) - 1);
   const capacityFactor = Math.exp(spreads.capacityRelative * normal('capacity'));
   const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * normal('temperature')));
   const resistanceFactor =
@@ -112,16 +116,13 @@ function toSample(basis: SampleBasis, point: readonly number[]): Sample {
     curveShift +
     spareMeter +
     (spreads.readingVolts * normal('spare-scatter')) / Math.sqrt(basis.readVolts.length) +
-    spreads.hysteresisVolts * even('spare-hysteresis');
+    hysteresis('spare-hysteresis');
   const bySoc = basis.targetSoc ?? null;
   const ownTargetSoc = bySoc === null ? null : bySoc.soc + bySoc.sd * normal('target-scatter');
   const targetShiftVolts =
     ownTargetSoc !== null
       ? voltsAtSoc(curve, ownTargetSoc) - basis.targetVolts
-      : curveShift +
-        targetMeter +
-        spreads.targetVolts * normal('target-scatter') +
-        spreads.hysteresisVolts * even('target-hysteresis');
+      : curveShift + targetMeter + spreads.targetVolts * normal('target-scatter') + hysteresis('target-hysteresis');
   const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * normal('self-discharge'));
   return {
     startSoc: basis.readVolts.map((volts) => socOf(curve, volts + spareShift) - lost),
@@ -133,6 +134,6 @@ function toSample(basis: SampleBasis, point: readonly number[]): Sample {
     targetShiftVolts,
     curveShiftVolts: curveShift,
     chargerDraw: normal('charger-meter'),
-    draws: point.map((value) => inverseNormal(value)),
+    draws,
   };
 }
