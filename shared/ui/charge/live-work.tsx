@@ -19,6 +19,7 @@ import { LiveHead, StageLine } from './live-head';
 import { ClipOnLine, CurrentLine, LookInLine } from './live-lines';
 import { isProven, type LiveScreenProps } from './live-props';
 import { ReadyFacts } from './ready-panel';
+import { RestLine } from './rest-line';
 import { SeenAndPlan } from './seen-and-plan';
 import { TopUpCallOut } from './top-up-call-out';
 import { OfflineCaution, WaitingReadings } from './waiting-readings';
@@ -143,6 +144,7 @@ function Asks({ charge, at, knownAt, acts, topUp, onSheet }: LiveScreenProps) {
       />
       <LookInLine {...lines} onDone={acts.lookIn} />
       <CurrentLine {...lines} onOffAt={() => onSheet('off-since')} />
+      <RestLine charge={charge} now={at.now} />
       <ClipOnLine {...lines} onChange={() => onSheet('clip-on')} />
     </>
   );

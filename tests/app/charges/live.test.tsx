@@ -195,6 +195,7 @@ describe('after the current', () => {
       by: mine.person,
       groupVolts: [3.906, 3.898, 3.905],
       celsius: 21,
+      early: false,
       verdict: { within: false, groups, spreadVolts: 0.008, worstGroup: 1 },
     };
     const due = charge('check-due', { ...mine, checkDueAt: iso('13:30'), restChecks: [check] });

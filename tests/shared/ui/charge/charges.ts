@@ -96,6 +96,7 @@ export function charge(stage: Stage, more: Partial<ChargeDto> = {}): ChargeDto {
     readings: [],
     restChecks: [],
     events: [],
+    rest: null,
     dominant: null,
     createdAt: iso('11:30'),
     labelUrl: 'https://bidewell.example.com/charges/c1',
