@@ -72,10 +72,11 @@ export function LiveWork(props: LiveScreenProps) {
 const isOver = ({ stage }: ChargeDto): boolean => stage === 'fitted' || stage === 'shelved';
 
 /** All readings, with the way to put one right. */
-export const LiveReadings = ({ charge, at, onGo }: LiveScreenProps) => (
+export const LiveReadings = ({ charge, at, meters, onGo }: LiveScreenProps) => (
   <ReadingLog
     charge={charge}
     now={at.now}
+    meters={meters}
     onCorrect={(reading) => onGo(`/charges/${charge.id}/log?correct=${reading.id}`)}
   />
 );
