@@ -245,6 +245,7 @@ export const pastSpare = (last: PastCharge, label: string): Spare => ({
   capacityAh: last.asked.capacityAh,
   healthPercent: null,
   capacitySource: 'measured',
+  capacitySdAh: null,
   condition: 'sound',
   quarantineReason: null,
   quarantinedAt: null,

@@ -18,6 +18,7 @@ import { wrongStage } from './charge-stage-conflict';
 import { markVisit } from './charge-visit';
 import { ampHoursText, bare, durationText, groupsText, millivoltsText, upperFirst } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
+import { keepFoundCapacity } from './found-capacity';
 import { newId } from './ids';
 import { correctedVolts } from './meter-trust';
 
@@ -77,6 +78,7 @@ export async function checkAfterRest(
     });
     await markVisit(write, at, null);
     const early = earlyText(file, at);
+    await keepFoundCapacity(write, check);
     charge.checkedAt = at;
     if (verdict.within) {
       charge.stage = 'ready';

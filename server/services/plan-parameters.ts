@@ -53,7 +53,7 @@ export function spareState(
   meter: Meter | null,
   now: number,
 ): SpareState {
-  const { capacityAh, source } = usedCapacity(spare, type);
+  const { capacityAh, source, sdAh } = usedCapacity(spare, type);
   const readingAgeS = Math.max(0, (now - reading.at) / 1000);
   return {
     groupVolts: correctedVolts(reading.groupVolts, meter),
@@ -62,7 +62,7 @@ export function spareState(
     meterId: reading.meterId,
     capacityAh,
     capacitySource: source,
-    capacityRelativeSd: null,
+    capacityRelativeSd: spare.capacitySdAh === null ? null : sdAh / capacityAh,
     condition: spare.quarantinedAt === null ? spare.condition : 'quarantined',
     quarantineReason: spare.quarantineReason,
   };

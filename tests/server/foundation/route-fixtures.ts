@@ -151,6 +151,10 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { reason: 'Dropped.', condition: 'dented', shelfPlace: 'box', charge: null },
   })),
   'POST /api/spares/:id/release': foreman((f) => ({ params: { id: f.spareId } })),
+  'POST /api/spares/:id/capacities/:capacityId': technician((f) => ({
+    params: { id: f.spareId, capacityId: f.capacityId },
+    body: { answer: 'take' },
+  })),
   'GET /api/spares/:id/history': technician((f) => ({ params: { id: f.spareId } })),
 
   'POST /api/estimates': {
