@@ -21,6 +21,7 @@ export { quantile, quantileOfSorted } from './statistics/quantile';
 export { seededRandom } from './statistics/seeded-random';
 export { latinHypercube, latinHypercubeNormal, shuffled } from './statistics/latin-hypercube';
 export { inverseNormal } from './statistics/inverse-normal';
+export { normalCdf } from './statistics/normal-cdf';
 export { predictRest, type RestForecast, type RestOptions, type RestReading } from './rest/predict-rest';
 export { combineFigures, type CombinedFigure, type Figure } from './learn/figure';
 export {

@@ -1,4 +1,5 @@
 import { compileCurve, PIECE, pieceAt } from '../curve/compiled-curve';
+import { slopeAtSoc } from '../curve/ocv';
 import type { PlanModel } from '../plan/plan-model';
 import { chargerSd } from '../plan/sample-run';
 import { SAMPLE_AXES, type Sample } from '../plan/samples';
@@ -70,13 +71,20 @@ export class Looks {
     return (sample) => rest(sample) + fixed + inner * (sample.longOhm[0]! / this.nominalOhm);
   }
 
-  /** What the model may be off under this current, V a group. */
-  modelSd({ over }: Observation, { groups, shares, lane, knot, ohmicOhm }: Circuit): number {
+  /** What the model may be off by the over-voltage of this current, V a group: all of it may jump with the current. */
+  overSd({ over }: Observation, { groups, shares, lane, knot, ohmicOhm }: Circuit): number {
     const through = groups.reduce(
       (sum, group, at) => sum + shares[at]! * over[group]!,
       lane.sign * knot.amps * ohmicOhm,
     );
     return Math.hypot(LIVE_SPREADS.modelRelative * through, LIVE_SPREADS.modelVolts);
+  }
+
+  /** What the model may be off under this current, V a group: by its over-voltage and by the curve along its own axis. */
+  modelSd(observation: Observation, circuit: Circuit): number {
+    const { groups, shares, knot } = circuit;
+    const soc = groups.reduce((sum, group, at) => sum + shares[at]! * knot.state.soc[group]!, 0);
+    return Math.hypot(this.overSd(observation, circuit), LIVE_SPREADS.modelSoc * slopeAtSoc(this.model.curve, soc));
   }
 
   /**

@@ -17,7 +17,7 @@ const TEMPERATURE = SAMPLE_AXES.indexOf('temperature');
 
 /** How far the voltage between the clips is off. */
 export const offOfVolts = (set: ParticleSet, looks: Looks, look: Look, at: Observation, circuit: Circuit) =>
-  set.offOf(look, JUMP_SHARE * looks.modelSd(at, circuit));
+  set.offOf(look, JUMP_SHARE * looks.overSd(at, circuit));
 
 /** The voltage between the clips: null where it is as it should be. */
 export function oddVolts(
