@@ -141,14 +141,15 @@ describe('a running charge', () => {
       id: 'r2',
       terminalVolts: 11.29,
       replaces: 'r1',
+      meterId: 'm1',
       reason: 'Two digits the wrong way round',
     });
     serverWith(charge('charging', { ...mine, readings: [old, next] }));
     draw(<Live />);
     expect(await screen.findByText('11.92 V · 10.0 A · 24 °C')).toBeTruthy();
-    expect(screen.getByText(/Ines, corrected since$/)).toBeTruthy();
+    expect(screen.getByText(/Ines, off the charger’s display, corrected since$/)).toBeTruthy();
     expect(screen.getByText('11.29 V · 10.0 A · 24 °C')).toBeTruthy();
-    expect(screen.getByText(/Ines, a correction: Two digits the wrong way round$/)).toBeTruthy();
+    expect(await screen.findByText(/Ines, with Hand meter 1, a correction: Two digits the wrong way round$/)).toBeTruthy();
     expect(screen.getAllByRole('button', { name: /^Correct the reading/ })).toHaveLength(1);
   });
 });
