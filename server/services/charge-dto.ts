@@ -172,6 +172,7 @@ export async function chargeDto(
     shelfPlace: file.spare.shelfPlace,
     meterId: charge.targetMeterId,
     targetCelsius: charge.targetCelsius,
+    targetSoc: typeof charge.frozen.target.soc === 'number' ? charge.frozen.target.soc * 100 : null,
     targetTypedVolts: charge.targetVolts,
     topUpOf: link(topUpOf?.get(charge.topUpOf ?? '') ?? null),
     wentOnAs: link(await findTopUpOf(manager, charge.workshopId, charge.id)),

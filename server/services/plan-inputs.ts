@@ -3,8 +3,8 @@
  * kept as a charge, so that both see the same numbers.
  */
 import type { EntityManager } from 'typeorm';
-import { planCharge } from '@/calc/index';
-import type { PlanInput, RuledOutWay } from '@/calc/plan-types';
+import { chemistryParameters, planCharge, voltsAtSoc } from '@/calc/index';
+import type { ModuleParameters, PlanInput, RuledOutWay } from '@/calc/plan-types';
 import type { PlanDto, PlanRequest } from '@/shared/contract/plan';
 import type { FrozenInputs } from '../entities/charge-json';
 import type { Meter } from '../entities/meter';
@@ -48,6 +48,8 @@ export interface PlanInputs {
   input: PlanInput;
   /** What a charge keeps of it. */
   frozen: FrozenInputs;
+  /** The target as it was typed, the meter's offset still in it; of a state of charge its volts. */
+  typedVolts: number;
   /** The spare that a resistor would join to this one. */
   neighbourSpareId: string | null;
   /** Names of the channels in the plan, and from when each is free, by id. */
@@ -87,7 +89,10 @@ export async function buildPlanInputs(
   if (readyBy !== null && readyBy <= now) throw invalid({ readyBy: 'This time has passed. Type a later one.' });
 
   const spareNow = spareState(spare, type, reading, spareMeter, now);
-  const targetVolts = correctedVolt(request.targetVolts, packMeter);
+  const module = moduleParameters(type);
+  const soc = typeof request.targetSoc === 'number' ? request.targetSoc / 100 : null;
+  const typedVolts = request.targetVolts ?? voltsOf(module, soc);
+  const targetVolts = soc === null ? correctedVolt(typedVolts, packMeter) : typedVolts;
   const toleranceMillivolts = request.toleranceMillivolts ?? workshop.toleranceMillivolts;
   const bench = await channelsFor(manager, workshopId, spare, request.withoutLearned === true, meters, now);
   const meterVolts = meterOffsetSdVolts(
@@ -104,10 +109,11 @@ export async function buildPlanInputs(
   );
   const frozen: FrozenInputs = {
     ...spreads,
-    module: moduleParameters(type),
+    module,
     spare: spareNow,
     target: {
       volts: targetVolts,
+      ...(soc === null ? {} : { soc }),
       toleranceVolts: toleranceMillivolts / 1000,
       meterId: request.meterId,
       celsius: request.packCelsius,
@@ -135,9 +141,11 @@ export async function buildPlanInputs(
       seed: frozen.seed,
       readyByS: readyBy === null ? null : (readyBy - now) / 1000,
       clipOnAtS: (clipOnAt - now) / 1000,
+      acceptWideBand: request.acceptWideBand === true,
       ...spreads,
     },
     frozen,
+    typedVolts,
     neighbourSpareId: neighbour?.spareId ?? null,
     channelNames: bench.names,
     blockedChannels: bench.blocked,
@@ -168,10 +176,16 @@ export async function planFor(
       plan: { ...plan, ruledOut: [...plan.ruledOut, ...inputs.blockedChannels] },
       plannedAt: toInstant(now),
       clipOnAt: toInstant(inputs.clipOnAt),
+      targetVolts: inputs.frozen.target.volts,
       toleranceMillivolts: inputs.toleranceMillivolts,
       channels: inputs.channelNames,
     },
   };
+}
+
+/** Rest voltage of a state of charge on the type's curve, V, to the tenth of a millivolt. */
+function voltsOf({ curve, chemistry }: ModuleParameters, soc: number | null): number {
+  return Math.round(voltsAtSoc(curve ?? chemistryParameters(chemistry).curve, soc ?? 0) * 1e4) / 1e4;
 }
 
 async function plannedSpare(

@@ -261,6 +261,8 @@ export interface ChargeDto extends ChargeCardDto {
   /** Meter the pack was read with, and at which temperature: a top-up is planned with both again. */
   meterId: string | null;
   targetCelsius: number | null;
+  /** The state of charge that was typed as the target, %; null: volts were. A top-up is planned with it again. */
+  targetSoc: number | null;
   /** The target as it was typed, with that meter's offset still in it; `targetVolts` is without. */
   targetTypedVolts: number;
   /** The charge that this one went on from, and the one that went on from this. */
