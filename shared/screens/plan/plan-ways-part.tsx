@@ -2,6 +2,7 @@ import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { OtherSpares } from '@/shared/ui/plan/other-spares';
 import { isOfTheModule, PlanRefused } from '@/shared/ui/plan/plan-refused';
+import { isPlateau, PlanPlateau } from '@/shared/ui/plan/plan-plateau';
 import { NoWay, PlanWork } from '@/shared/ui/plan/plan-work';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { ErrorState } from '@/shared/ui/states/error-state';
@@ -20,10 +21,21 @@ export function PlanWaysPart({
   onChange: (change: Partial<PlanTyped>) => void;
 }) {
   const { dto, refused, spare, settled, now, others, plan } = page;
+  if (dto && refused && isPlateau(dto.plan.refusals))
+    return (
+      <PlanPlateau
+        refusals={dto.plan.refusals}
+        onSoc={() => {
+          page.setOpen(true);
+          onChange({ targetBy: 'soc' });
+        }}
+        onAccept={() => onChange({ acceptWideBand: 'yes' })}
+      />
+    );
   if (dto && refused && spare)
     return (
       <View style={{ rowGap: 20 }}>
-        <PlanRefused spare={spare} refusals={dto.plan.refusals} targetVolts={settled?.targetVolts ?? 0} now={now} />
+        <PlanRefused spare={spare} refusals={dto.plan.refusals} targetVolts={dto.targetVolts} now={now} />
         {dto.plan.refusals.some(isOfTheModule) ? (
           <OtherSpares others={others} clipOnAt={Date.parse(dto.clipOnAt)} onTake={onTake} />
         ) : null}

@@ -13,9 +13,15 @@ export const finishNames: Readonly<Record<Finish, string>> = {
   'over-and-settle': 'over and settle',
 };
 
-/** 'Terminals, over and settle, 20 A' */
-export const optionTitle = (option: Pick<PlanOption, 'way' | 'finish'>): string =>
-  option.way === 'resistor' ? wayNames.resistor : `${wayNames[option.way]}, ${finishNames[option.finish]}`;
+type Titled = Pick<PlanOption, 'way' | 'finish' | 'knownEnd'>;
+
+/** How it ends: 'over and settle'; where it is counted, from which end: 'counted from full'. */
+export const finishOf = ({ finish, knownEnd }: Titled): string =>
+  knownEnd === undefined ? finishNames[finish] : `counted from ${knownEnd}`;
+
+/** 'Terminals, over and settle' */
+export const optionTitle = (option: Titled): string =>
+  option.way === 'resistor' ? wayNames.resistor : `${wayNames[option.way]}, ${finishOf(option)}`;
 
 /** The number that makes most of the band, and what to do about it. */
 export const doubtWords: Readonly<Record<Doubt, { name: string; advice: string }>> = {

@@ -1,4 +1,4 @@
-import { cleanup, fireEvent, screen, waitFor } from '@testing-library/react';
+import { cleanup, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Plan from '@/app/(workshop)/plan';
@@ -34,6 +34,7 @@ const spare = {
   healthPercent: null,
   usedCapacityAh: 66,
   capacitySdAh: 2,
+  capacities: [],
   quarantine: null,
   charge: null,
   reading: null,
@@ -45,6 +46,7 @@ const planned: PlanDto = {
   plan: planCharge(planInput({ channels: [channel('A1')] })),
   plannedAt: new Date().toISOString(),
   clipOnAt: new Date().toISOString(),
+  targetVolts: 3.92,
   toleranceMillivolts: 5,
   channels: { 'id-A1': { name: 'A1', chargerName: 'Supply A', freeAt: null } },
 };
@@ -57,6 +59,7 @@ beforeEach(() => {
   Object.assign(server.answers, {
     'GET /api/spares': () => Response.json([spare]),
     'GET /api/meters': () => Response.json(meters),
+    'GET /api/module-types': () => Response.json([{ id: 't1', chemistry: 'nmc' }]),
     'GET /api/workshop': () => Response.json({ id: 'w1', toleranceMillivolts: 5 }),
     'POST /api/plans': () => Response.json(planned),
   });
@@ -150,6 +153,39 @@ describe('planning a charge', () => {
     fireEvent.click(checks());
     await waitFor(() => expect(kept()).toHaveLength(1));
     expect(kept()[0]!.body).toMatchObject({ withoutLearned: true });
+  });
+
+  it('refused on the flat of the curve shows the band it would have, and plans it only once that is taken', async () => {
+    const text = 'The curve is flat at 3.300 V: that may be 35 % to 62 % of charge.';
+    const plateau = {
+      totalS: { p10: 12_600, p50: 18_000, p90: 32_400 },
+      soc: { p10: 0.35, p50: 0.48, p90: 0.62 },
+    };
+    server.answers['POST /api/plans'] = (body) =>
+      Response.json(
+        (body as { acceptWideBand?: boolean }).acceptWideBand
+          ? planned
+          : {
+              ...planned,
+              plan: {
+                ...planned.plan,
+                options: [],
+                refusals: [{ code: 'numbers', group: null, text, plateau }],
+              },
+            },
+      );
+    await type('Pack rests at', '3.300');
+    const box = within(await screen.findByRole('alert', { name: 'The voltage says too little here' }));
+    expect(box.getByText('(3:30–9:00)')).toBeTruthy();
+    expect(box.getByText(/^\(35–62\s%\)$/)).toBeTruthy();
+    expect(screen.queryByRole('button', { name: 'Quarantine' })).toBeNull();
+    fireEvent.click(box.getByRole('button', { name: 'Plan it all the same' }));
+    await screen.findByText('Ways, soonest first');
+    expect(server.writes().at(-1)!.body).toMatchObject({ targetVolts: 3.3, acceptWideBand: true });
+    // Another target has another band: what was taken counts for the old one only.
+    await type('Pack rests at', '3.310');
+    expect(await screen.findByRole('alert', { name: 'The voltage says too little here' })).toBeTruthy();
+    expect(server.writes().at(-1)!.body).not.toHaveProperty('acceptWideBand');
   });
 
   it('made again from a charge keeps the new one in place of it', async () => {

@@ -81,6 +81,7 @@ export function charge(stage: Stage, more: Partial<ChargeDto> = {}): ChargeDto {
     shelfPlace: 'D3',
     meterId: 'm1',
     targetCelsius: 21,
+    targetSoc: null,
     targetTypedVolts: 3.906,
     topUpOf: null,
     wentOnAs: null,
