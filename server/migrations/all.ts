@@ -4,6 +4,7 @@ import { NeighbourSpare1764700000000 } from './1764700000000-neighbour-spare';
 import { AlertPassed1764800000000 } from './1764800000000-alert-passed';
 import { EarlyCheck1764900000000 } from './1764900000000-early-check';
 import { SpareCapacity1765000000000 } from './1765000000000-spare-capacity';
+import { Behaviours1765100000000 } from './1765100000000-behaviours';
 
 export const migrations = [
   Initial1764600000000,
@@ -11,4 +12,5 @@ export const migrations = [
   AlertPassed1764800000000,
   EarlyCheck1764900000000,
   SpareCapacity1765000000000,
+  Behaviours1765100000000,
 ];

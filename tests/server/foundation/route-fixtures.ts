@@ -119,6 +119,11 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/module-types/:id': technician((f) => ({ params: { id: f.typeId } })),
   'PATCH /api/module-types/:id': manager((f) => ({ params: { id: f.typeId }, body: moduleTypeForm({ note: 'new' }) })),
   'DELETE /api/module-types/:id': manager((f) => ({ params: { id: f.spareTypeId } })),
+  'PUT /api/module-types/:id/curve': manager((f) => ({
+    params: { id: f.typeId },
+    body: { csv: Array.from({ length: 11 }, (_, at) => `${at * 10};${3 + at / 10}`).join('\n') },
+  })),
+  'DELETE /api/module-types/:id/curve': manager((f) => ({ params: { id: f.typeId } })),
   'GET /api/chargers': technician(),
   'POST /api/chargers': manager((f) => ({ body: charger(f) })),
   'GET /api/chargers/:id': technician((f) => ({ params: { id: f.chargerId } })),
