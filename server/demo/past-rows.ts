@@ -185,6 +185,7 @@ export function pastReadings(past: PastCharge, lookIns: readonly LookIn[], noise
         groupVolts: null,
         meterId: `demo-meter-${past.wish.channel}`,
         personId: personId(past),
+        takenAt: 'supply',
         source: 'typed',
         replacesId: null,
         replacedById: null,

@@ -5,6 +5,7 @@ import { AlertPassed1764800000000 } from './1764800000000-alert-passed';
 import { EarlyCheck1764900000000 } from './1764900000000-early-check';
 import { SpareCapacity1765000000000 } from './1765000000000-spare-capacity';
 import { Behaviours1765100000000 } from './1765100000000-behaviours';
+import { ReadingPlace1765200000000 } from './1765200000000-reading-place';
 
 export const migrations = [
   Initial1764600000000,
@@ -13,4 +14,5 @@ export const migrations = [
   EarlyCheck1764900000000,
   SpareCapacity1765000000000,
   Behaviours1765100000000,
+  ReadingPlace1765200000000,
 ];

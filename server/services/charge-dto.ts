@@ -4,6 +4,7 @@ import type {
   ChargeDto,
   ChargeEventDto,
   InstantBand,
+  OddDto,
   ReadingDto,
   RestCheckDto,
   RestDto,
@@ -189,6 +190,8 @@ export async function chargeDto(
     restChecks: file.restChecks.map((check) => restCheckDto(file, check)),
     events: events.map((event) => eventDto(file, event)),
     rest: restDto(fresh),
+    odd: oddDto(fresh),
+    learned: reckoning?.learned ?? { capacityAh: null, longOhm: null, leadOhm: null },
     dominant: reckoning?.dominant ?? charge.option.dominant,
     createdAt: toInstant(charge.createdAt),
     labelUrl: `${(config.publicUrl ?? '').replace(/\/+$/, '')}/charges/${charge.id}`,
@@ -220,6 +223,14 @@ function restDto({ charge }: ChargeFile): RestDto | null {
   return { ...said, enoughAt: enoughAtS === null ? null : toInstant(instantOf(charge, enoughAtS)) };
 }
 
+/** Only of a charge that goes on: of one that is over there is nothing to check any more. */
+function oddDto({ charge }: ChargeFile): OddDto | null {
+  const odd = charge.reckoning?.reckoning.odd ?? null;
+  if (odd === null || !isUnderWay(charge.stage)) return null;
+  const { sinceS, ...seen } = odd;
+  return { ...seen, since: toInstant(instantOf(charge, sinceS)) };
+}
+
 function expectedOf({ charge }: ChargeFile): ChargeDto['expected'] {
   const expected = charge.reckoning?.reckoning.expected ?? null;
   return expected === null
@@ -241,6 +252,7 @@ export const readingDto = (file: ChargeFile, reading: ChargeReading, member: Mem
   celsius: reading.celsius,
   groupVolts: reading.groupVolts,
   meterId: reading.meterId,
+  takenAt: reading.takenAt,
   by: personRef(file.people, reading.personId)!,
   source: reading.source,
   replacedBy: reading.replacedById,

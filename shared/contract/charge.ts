@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { id, instant, optionalText, reason, type Instant, type PersonRef } from './common';
+import type { OddSeen, Reckoning } from '@/calc/live-types';
 import type { Band, CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
 import { typedGroupVolts } from './group-volts';
 import { groupVolts, optionalQuantity } from './quantity';
@@ -73,6 +74,8 @@ const readingShape = {
   celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 120 }),
   groupVolts: z.optional(z.nullable(typedGroupVolts)),
   meterId: z.optional(z.nullable(id)),
+  /** Where the volts between the clips were read. Left out: at the charger, by its own display, unless a meter is named. */
+  takenAt: z.optional(z.nullable(z.enum(['supply', 'module']))),
 };
 /** At least one number; which of them is up to what can be read. */
 export const readingSchema = z.object(readingShape).check(
@@ -206,7 +209,10 @@ export interface ReadingDto {
   amps: number | null;
   celsius: number | null;
   groupVolts: number[] | null;
+  /** Meter it was read with; null: the charger's own display. */
   meterId: string | null;
+  /** Where the volts between the clips were read; null: nobody has said, or none were. */
+  takenAt: 'supply' | 'module' | null;
   by: PersonRef;
   source: 'typed';
   /** Not null: this one is replaced by that one. */
@@ -233,6 +239,12 @@ export interface RestCheckDto {
   /** It came before the minimum rest was over. */
   early: boolean;
   verdict: CheckVerdict;
+}
+
+/** A reading that nothing explains, and is not learned from. */
+export interface OddDto extends Omit<OddSeen, 'sinceS'> {
+  /** Instant of the first reading that is so. */
+  since: Instant;
 }
 
 /** What the group readings since the end of current say of the rest. */
@@ -284,6 +296,10 @@ export interface ChargeDto extends ChargeCardDto {
   events: ChargeEventDto[];
   /** Null where nothing rests for sure (nobody has said that the current is off), or with fewer than three readings. */
   rest: RestDto | null;
+  /** What is odd about the latest readings; null: nothing, or it has passed. */
+  odd: OddDto | null;
+  /** What the readings of this charge have taught; null each where they have not told. */
+  learned: Reckoning['learned'];
   dominant: string | null;
   createdAt: Instant;
   /**
