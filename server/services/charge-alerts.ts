@@ -70,7 +70,7 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
     // One kind is told once a charge: what comes and goes with every reading would ring with every reading.
     wanted.push({
       kind: 'odd-reading',
-      level: 'amber',
+      level: 'alarm',
       since: instantOf(charge, odd.sinceS),
       key: odd.kind,
       text: oddText(file, odd),

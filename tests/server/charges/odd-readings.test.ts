@@ -30,7 +30,7 @@ test('a current of 0 A where 10 A are set is odd at once, is told once, and is s
   expect(odd.odd).toMatchObject({ kind: 'no-current', quantity: 'amps', seen: 0 });
   expect(Math.abs(at(odd.odd!.since) - read)).toBeLessThan(1000);
   const [alert] = await oddAlerts();
-  expect(alert).toMatchObject({ level: 'amber', clearedAt: null, chargeId: charge.id });
+  expect(alert).toMatchObject({ level: 'alarm', clearedAt: null, chargeId: charge.id });
   expect(alert!.seen).toMatch(/^No current flows\. .*A was expected\.$/);
   expect(alert!.checkFirst).toMatch(/^Whether A1 is on, then the clips/);
   await bench.live(2 * minute, minute);
