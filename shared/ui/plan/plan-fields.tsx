@@ -2,15 +2,13 @@ import { useState } from 'react';
 import { View } from 'react-native';
 import type { MeterDto } from '@/shared/contract/equipment';
 import type { SpareDto } from '@/shared/contract/spare';
-import { useFormats } from '../format/formats';
-import { volts } from '../format/quantities';
-import { readBeforeWords } from '../spare/spare-words';
 import { DateTimeField } from '../primitives/date-time-field';
 import { Field } from '../primitives/field';
 import { Link } from '../primitives/link';
 import { Select } from '../primitives/select';
 import { makeStyles } from '../theme/make-styles';
 import type { PlanField, PlanTyped } from './plan-typed';
+import { SpareChoice } from './spare-choice';
 
 /** From spare to pack: everything a plan is made of, typed. */
 export function PlanFields({
@@ -34,22 +32,6 @@ export function PlanFields({
   onLeave: (field: PlanField) => void;
 }) {
   const styles = useStyles();
-  const { marks } = useFormats();
-  const spareWords = (spare: SpareDto) => {
-    const lowest =
-      readBeforeWords(spare) !== null
-        ? ', to be read again'
-        : spare.reading
-          ? `, ${volts(Math.min(...spare.reading.groupVolts), marks)}`
-          : '';
-    const where =
-      spare.where === 'shelf'
-        ? spare.shelfPlace
-          ? `, ${spare.shelfPlace}`
-          : ''
-        : `, ${spare.where === 'charge' ? 'on a charge' : spare.where}`;
-    return `${spare.label} · ${spare.typeName}${lowest}${where}`;
-  };
   const field = (name: PlanField) => ({
     value: typed[name],
     error: errors[name],
@@ -64,15 +46,12 @@ export function PlanFields({
     );
   return (
     <View style={styles.form}>
-      <Select
-        label="Spare"
-        empty={spares ? 'Choose a spare' : 'Reading the stock'}
-        value={typed.spareId || null}
-        options={(spares ?? []).map((spare) => ({ value: spare.id, label: spareWords(spare) }))}
-        onChange={(spareId) => onChange({ spareId })}
-        onBlur={() => onLeave('spareId')}
+      <SpareChoice
+        spares={spares}
+        spareId={typed.spareId}
         error={errors.spareId}
-        required
+        onChange={(spareId) => onChange({ spareId })}
+        onLeave={() => onLeave('spareId')}
       />
       <View style={styles.row}>
         <View style={styles.half}>
