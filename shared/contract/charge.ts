@@ -197,7 +197,7 @@ export interface CheckItemDto {
   title: string;
   /** The question to a person; where the numbers answer, what they say: '21 °C, allowed 10–45 °C'. */
   question: string;
-  /** What it is about, or where the answer comes from: 'Answered from the reading at 13:37. Locked.' */
+  /** What it is about, or where the answer comes from: 'Answered from the reading at 13:37 by Ines Marlow. Locked.' */
   detail: string;
   /** Words on the two answers; the given one stands behind the title afterwards. Empty where the numbers answer. */
   yes: string;
