@@ -111,18 +111,21 @@ function ReadWith<Values extends FieldValues>({
   name: FieldPath<Values>;
   meters: readonly MeterDto[];
 }) {
-  const { field, fieldState } = useController({ control: form.control, name });
-  const value = field.value as string | null;
+  const {
+    field: { ref, value: typed, onChange, onBlur },
+    fieldState,
+  } = useController({ control: form.control, name });
+  const value = typed as string | null;
   return (
     <Select
-      ref={field.ref as Ref<FieldHandle>}
+      ref={ref as Ref<FieldHandle>}
       label="Read with"
       empty="Choose the meter"
       required
       error={fieldState.error && (value === '' ? 'Choose the meter, or not known.' : fieldState.error.message)}
-      onBlur={field.onBlur}
+      onBlur={onBlur}
       value={value === null ? notKnown : value || null}
-      onChange={(id) => field.onChange(id === notKnown ? null : id)}
+      onChange={(id) => onChange(id === notKnown ? null : id)}
       options={[
         ...meters.map((meter) => ({ value: meter.id, label: meter.name })),
         { value: notKnown, label: 'not known' },
