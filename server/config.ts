@@ -36,6 +36,9 @@ export interface Config {
   metroPort: number | null;
 }
 
+/** Whether a host to listen on means every address of this machine, and so is none to be opened itself. */
+export const isEveryAddress = (host: string): boolean => host === '0.0.0.0' || host === '::';
+
 /**
  * Reads and checks the environment once.
  * @throws Error naming the variable and what it may be.

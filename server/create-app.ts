@@ -6,6 +6,7 @@ import { notHere, problems } from './middleware/problems';
 import { requestLog } from './middleware/request-log';
 import { sameOrigin } from './middleware/same-origin';
 import { securityHeaders } from './middleware/security-headers';
+import { unbelievedProxy } from './middleware/unbelieved-proxy';
 import { webApp } from './middleware/web-app';
 import { routesModules } from './routes/all';
 import { makeRegistrar } from './routes/register-route';
@@ -19,6 +20,7 @@ export function createApp(deps: Deps): Express {
   app.set('trust proxy', config.proxyHops);
   app.set('query parser', 'simple');
   app.use(requestLog(deps.log));
+  app.use(unbelievedProxy(deps.log, config.proxyHops));
 
   const web = webApp(config.webDir);
   // Metro's page and its answers to a reload hold scripts that no policy could name.

@@ -1,5 +1,5 @@
 /** The process: reads the environment, starts the server, and ends it properly. */
-import { readConfig } from './config';
+import { isEveryAddress, readConfig } from './config';
 import { makeLog } from './middleware/request-log';
 import { startServer, type RunningServer } from './start-server';
 
@@ -41,6 +41,9 @@ for (const signal of ['SIGTERM', 'SIGINT'] as const) {
 
 try {
   running = await startServer(config, log);
+  // `npm start` says it to whoever started it.
+  const { address, port } = running;
+  process.send?.({ ready: { address, port, demo: config.demo, everywhere: isEveryAddress(config.host) } });
   log.info({ address: running.address, demo: config.demo, dataDir: config.dataDir }, 'ready');
 } catch (error) {
   fail('the server did not start')(error);

@@ -3,7 +3,7 @@ import https from 'node:https';
 import type { AddressInfo } from 'node:net';
 import type { Logger } from 'pino';
 import { systemClock, type Clock } from './clock';
-import type { Config } from './config';
+import { isEveryAddress, type Config } from './config';
 import { createApp } from './create-app';
 import { assertDurable, makeDataSource } from './data-source';
 import { databaseFile, prepareDataFolder } from './data-files';
@@ -46,7 +46,7 @@ function listenOn(server: http.Server, config: Config): Promise<number> {
 
 function addressOf(config: Config, port: number): string {
   if (config.publicUrl) return config.publicUrl;
-  const host = config.host === '0.0.0.0' || config.host === '::' ? 'localhost' : config.host;
+  const host = isEveryAddress(config.host) ? 'localhost' : config.host;
   return `${config.tls ? 'https' : 'http'}://${host.includes(':') ? `[${host}]` : host}:${port}`;
 }
 

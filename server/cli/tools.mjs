@@ -3,6 +3,7 @@
 import { spawn } from 'node:child_process';
 import { createHash } from 'node:crypto';
 import fs from 'node:fs';
+import os from 'node:os';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 
@@ -68,18 +69,39 @@ export function chromiumPath() {
 }
 
 /**
- * Runs a long-lived command, hands SIGINT and SIGTERM on to it and ends with its status. A terminal sends Ctrl-C to
- * the child as well; the server takes a second signal as 'now', so it is handed on only where the child has not had it.
+ * Runs a long-lived command, hands SIGINT and SIGTERM on to it and ends with its status; where a signal ended it that
+ * came from nobody here (it crashed, the system ran out of memory), with 128 and the signal's number. A terminal sends
+ * Ctrl-C to the child as well; the server takes a second signal as 'now', so it is handed on only where the child has
+ * not had it.
+ *
+ * `onReady` gets what the command sends as `{ ready }` over its channel, once.
  */
-export function runAndFollow(command, args, env = {}) {
-  const child = spawn(command, args, { cwd: root, stdio: 'inherit', env: { ...process.env, ...env } });
+export function runAndFollow(command, args, env = {}, onReady = null) {
+  const child = spawn(command, args, {
+    cwd: root,
+    stdio: ['inherit', 'inherit', 'inherit', ...(onReady ? ['ipc'] : [])],
+    env: { ...process.env, ...env },
+  });
+  const asked = new Set();
   for (const signal of ['SIGINT', 'SIGTERM']) {
     process.on(signal, () => {
+      asked.add(signal);
       if (signal === 'SIGINT' && process.stdin.isTTY) return;
       child.kill(signal);
     });
   }
-  child.on('exit', (status, signal) => process.exit(status ?? (signal === 'SIGKILL' ? 137 : 0)));
+  child.on('message', (message) => {
+    if (!message?.ready) return;
+    child.disconnect();
+    onReady(message.ready);
+  });
+  child.on('error', (error) => {
+    console.error(`bidewell: ${command}: ${error.message}`);
+    process.exit(1);
+  });
+  child.on('exit', (status, signal) =>
+    process.exit(status ?? (asked.has(signal) ? 0 : 128 + os.constants.signals[signal])),
+  );
   return child;
 }
 

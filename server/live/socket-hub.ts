@@ -23,10 +23,11 @@ export interface SocketHub extends LiveHub {
 
 type HubDeps = Pick<Deps, 'config' | 'dataSource' | 'secrets' | 'clock' | 'log'>;
 
-/** What a wall hears: that the board changed and that it is heard. The rest is people's. */
+/** What a wall hears: that the board or its channels changed and that it is heard. The rest is people's. */
 const wallEvents: ReadonlySet<LiveEvent> = new Set<LiveEvent>([
   'board:changed',
   'charge:changed',
+  'equipment:changed',
   'workshop:changed',
   'heartbeat',
   'session:ended',

@@ -19,6 +19,7 @@ import {
   type CheckWords,
 } from './charge-check-items';
 import type { ChargeFile } from './charge-file';
+import { channelRefusals } from './channel-refusals';
 import { isWaitingToStart } from './charge-stages';
 import { celsiusText, clockText } from './charge-words';
 import { toInstant } from './instants';
@@ -70,7 +71,7 @@ export async function checkSheet(
   const words = (code: CheckCode): CheckWords => {
     const answer = present.get(code);
     if (!waiting && code === 'temperature' && answer?.note)
-      return locked('data', code, answer.note, 'Answered from the reading before clipping on. Locked.');
+      return locked('data', code, answer.note, fromReading(file, answer, now));
     const refusal = refusals.find((one) => checkOfRefusal[one.code] === code);
     if (refusal && code !== 'temperature')
       return locked('ruled-out', code, refusal.text, 'Ruled out by the numbers. Locked.');
@@ -78,7 +79,7 @@ export async function checkSheet(
     return stale(code) && asked.by === 'person' ? askedAgain(asked, file, last.get(code)!, now) : asked;
   };
   return {
-    items: checkCodes.map((code) => itemOf(file, code, words(code), present.get(code) ?? null)),
+    items: checkCodes.map((code) => itemOf(file, code, words(code), present.get(code) ?? null, reading)),
     refusals,
     reading,
     moved: state === null || reading === null ? null : movedSince(file, reading, state),
@@ -106,15 +107,28 @@ function askedAgain(words: CheckWords, { people, workshop }: ChargeFile, answer:
   return { ...words, detail: `${words.detail} ${who} answered ${when}, over 12\u00a0h ago: look again.` };
 }
 
-function itemOf(file: ChargeFile, code: CheckCode, words: CheckWords, answer: CheckAnswer | null): CheckItemDto {
-  // The numbers answer for nobody, and a locked check has no answer to change.
+/** 'Answered from the reading at 13:37 by Ines Marlow. Locked.' */
+function fromReading(file: ChargeFile, { personId, at }: Pick<SpareReading, 'personId' | 'at'>, now: number): string {
+  const who = personRef(file.people, personId)?.name ?? 'somebody';
+  return `Answered from the reading at ${clockText(at, file.workshop.zone, now)} by ${who}. Locked.`;
+}
+
+function itemOf(
+  file: ChargeFile,
+  code: CheckCode,
+  words: CheckWords,
+  answer: CheckAnswer | null,
+  reading: SpareReading | null,
+): CheckItemDto {
+  // A locked check has no answer to change. The temperature was read by somebody; other numbers answer for nobody.
   const given = words.by === 'person' ? answer : null;
+  const answered = words.by === 'data' && code === 'temperature' ? (answer?.note ? answer : reading) : given;
   return {
     code,
     ...words,
     answer: words.by === 'data' ? 'yes' : words.by === 'ruled-out' ? 'no' : (given?.answer ?? null),
-    answeredBy: personRef(file.people, given?.personId ?? null),
-    answeredAt: given === null ? null : toInstant(given.at),
+    answeredBy: personRef(file.people, answered?.personId ?? null),
+    answeredAt: answered === null ? null : toInstant(answered.at),
     note: given?.note ?? null,
   };
 }
@@ -147,34 +161,7 @@ function presentRefusals(file: ChargeFile, state: SpareState): Refusal[] {
     celsius: (least + most) / 2,
     seed: frozen.seed,
   });
-  return [...found, ...ceilingRefusals(file)];
-}
-
-/** The channel as it is now against the cap: somebody may have changed the equipment since the plan. */
-function ceilingRefusals({ charge, channels }: ChargeFile): Refusal[] {
-  const { option } = charge;
-  const step = option.steps[0];
-  const cap = option.setVoltsCap;
-  return (step?.channelIds ?? []).flatMap((id): Refusal[] => {
-    const channel = channels.get(id);
-    if (!channel || channel.retired)
-      return [
-        {
-          code: 'ceiling',
-          group: null,
-          text: `${channel?.name ?? 'Its channel'} is out of use. Plan it again on another channel.`,
-        },
-      ];
-    if (step?.direction === 'charge' && cap !== null && !channel.adjustableVolts && channel.maxVolts > cap + 1e-6)
-      return [
-        {
-          code: 'ceiling',
-          group: null,
-          text: `${channel.name} gives ${channel.maxVolts.toFixed(2)}\u00a0V and cannot be set lower. ${cap.toFixed(2)}\u00a0V is the most that keeps a forgotten charge safe. Plan it on another channel.`,
-        },
-      ];
-    return [];
-  });
+  return [...found, ...channelRefusals(file)];
 }
 
 function wordsOf(
@@ -220,7 +207,7 @@ function temperatureOf(file: ChargeFile, reading: SpareReading | null, waiting: 
       `Ruled out by the reading at ${at}. Locked. ${wayOut}, then read it again.`,
     );
   }
-  return locked('data', 'temperature', says, `Answered from the reading at ${at}. Locked.`);
+  return locked('data', 'temperature', says, fromReading(file, reading, now));
 }
 
 /** Sentence that keeps the timer from starting because of the checks; null: all of them let it start. */

@@ -1,6 +1,7 @@
 import { channelNamesOf } from './charge-steps';
 import { groupCountProblem, groupVoltsProblem } from '@/shared/contract/group-volts';
 import type { ChargeDto, ReadingInput } from '@/shared/contract/charge';
+import { ampsProblem } from '@/shared/contract/reading-amps';
 import type { Deps, Member } from '../deps';
 import type { ChargeReading } from '../entities/charge-reading';
 import { conflict, forbidden, invalid, notFound } from '../errors/domain-error';
@@ -168,8 +169,9 @@ function signedAmps(write: ChargeWrite, amps: number | null, fields: Record<stri
   const out = (step?.direction ?? charge.direction) === 'discharge';
   const planned = Math.abs(step?.setAmps ?? charge.option.amps);
   const size = Math.abs(amps);
-  if (!out && amps < 0) {
-    fields.amps = `${ampsText(amps)} would be a discharge; this one charges. ${ampsText(size)}?`;
+  const wrongWay = ampsProblem(amps, out ? 'discharge' : 'charge');
+  if (wrongWay !== null) {
+    fields.amps = wrongWay;
     return null;
   }
   if (planned > 0 && size > planned * MOST_TIMES_PLANNED) {

@@ -1,11 +1,12 @@
 /** The end of a charge: the check after the rest, fitting, the shelf, and whose it is. */
 import { judgeCheck } from '@/calc/index';
 import type { CheckVerdict } from '@/calc/plan-types';
-import type { ChargeDto, RestCheckInput } from '@/shared/contract/charge';
-import { groupVoltsProblems } from '@/shared/contract/group-volts';
+import type { ChargeDto, TypedRestCheck } from '@/shared/contract/charge';
+import { restCheckSchemaFor } from '@/shared/contract/rest-check';
 import { can } from '@/shared/contract/roles';
 import type { Deps, Member } from '../deps';
 import { forbidden, invalid, notFound } from '../errors/domain-error';
+import { fieldsOf } from '../errors/zod-fields';
 import { alertsOfCharge, updateAlert } from '../repositories/alerts.repository';
 import { insertRestCheck } from '../repositories/charge-rows.repository';
 import { updateSpare } from '../repositories/charge-stock.repository';
@@ -34,7 +35,7 @@ export async function checkAfterRest(
   member: Member,
   id: string,
   rev: number,
-  input: RestCheckInput,
+  typed: TypedRestCheck,
   now: number,
 ): Promise<ChargeDto> {
   const dto = await changeCharge(deps, member, id, rev, now, async (write) => {
@@ -43,7 +44,10 @@ export async function checkAfterRest(
     if (charge.stage !== 'resting' && charge.stage !== 'check-due')
       throw wrongStage(write, 'The check comes after the current has ended.');
     const { module, target, spare } = charge.frozen;
-    const fields = groupVoltsProblems(input.groupVolts, module, 'groupVolts');
+    const read = restCheckSchemaFor(module, charge.toleranceVolts).safeParse(typed);
+    if (!read.success) throw invalid(fieldsOf(read.error));
+    const input = read.data;
+    const fields: Record<string, string> = {};
     const meter = input.meterId === null ? null : (file.meters.get(input.meterId) ?? null);
     if (input.meterId !== null && meter === null) fields.meterId = 'This meter is not on the list. Choose another.';
     if (Object.keys(fields).length > 0) throw invalid(fields);

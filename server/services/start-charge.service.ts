@@ -63,14 +63,15 @@ export function startCharge(
   });
 }
 
-async function refuseByChecks({ manager, file, now, member }: ChargeWrite): Promise<void> {
+async function refuseByChecks({ manager, file, now }: ChargeWrite): Promise<void> {
   const { charge } = file;
   const answers = (await answersOf(manager, charge.workshopId, [charge.id])).get(charge.id) ?? [];
   const sheet = await checkSheet(manager, file, answers, now);
   const block = sheetBlock(sheet);
   if (block) throw new DomainError(422, block.code, block.text, { present: sheet.items });
   const temperature = sheet.items.find((item) => item.code === 'temperature')!;
-  if (temperature.by !== 'data') return;
+  const { reading } = sheet;
+  if (temperature.by !== 'data' || reading === null) return;
   // What the reading answered is kept with the charge; later readings must not change what was known at the start.
   await replaceAnswer(manager, {
     id: newId(),
@@ -79,8 +80,9 @@ async function refuseByChecks({ manager, file, now, member }: ChargeWrite): Prom
     code: 'temperature',
     answer: 'yes',
     note: temperature.question,
-    personId: member.personId,
-    at: now,
+    // Who read it, and when.
+    personId: reading.personId,
+    at: reading.at,
     replacedAt: null,
   });
 }

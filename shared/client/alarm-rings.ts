@@ -1,6 +1,5 @@
 /** When an alert rings, as a pure rule: raised once, again where the look says so, until somebody has it. */
 import type { AlertDto, AlertKind } from '@/shared/contract/alert';
-import type { Instant } from '@/shared/contract/common';
 import type { SoundName } from './sound-contours';
 
 const minute = 60_000;
@@ -24,11 +23,8 @@ export const isOpen = (alert: AlertDto): boolean => alert.takenBy === null && al
 export const concerns = (alert: AlertDto, personId: string): boolean =>
   alert.for === null || alert.for.id === personId || alert.level === 'alarm';
 
-/** An alert as the server passes it on; one that was never passed has no such instant. */
-type Passable = AlertDto & { passedAt?: Instant | null };
-
 /** Since when it rings, epoch ms: for whom it was passed to, from then. */
-export const ringsSince = (alert: Passable): number => Date.parse(alert.passedAt ?? alert.raisedAt);
+export const ringsSince = (alert: AlertDto): number => Date.parse(alert.passedAt ?? alert.raisedAt);
 
 /** Whether the alert rings after `from` and not later than `to` (epoch ms). */
 export function ringsBetween(alert: AlertDto, from: number, to: number): boolean {

@@ -91,13 +91,22 @@ export type ReadingInput = z.infer<typeof readingSchema>;
 /** A correction keeps the old reading and says why. */
 export const correctReadingSchema = z.object({ ...readingShape, reason: z.optional(optionalText('The reason', 300)) });
 
+/** As it is typed, digits and all: what can be judged by them is up to the type and the tolerance (rest-check.ts). */
 export const restCheckSchema = z.object({
-  groupVolts: typedGroupVolts,
+  groupVolts: z
+    .array(z.union([z.string(), z.number()], 'Type the voltage of each group.'))
+    .check(
+      z.minLength(1, 'Type the voltage of each group.'),
+      z.maxLength(24, 'More than 24 groups is no module. Type those of one module.'),
+    ),
   celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 90 }),
   meterId: z.nullable(id),
   at: atNow,
 });
-export type RestCheckInput = z.infer<typeof restCheckSchema>;
+export type TypedRestCheck = z.infer<typeof restCheckSchema>;
+export interface RestCheckInput extends Omit<TypedRestCheck, 'groupVolts'> {
+  groupVolts: number[];
+}
 
 export const fitSchema = z.object({ note: z.optional(optionalText('The note')) });
 export const shelveSchema = z.object({
@@ -191,7 +200,7 @@ export interface CheckItemDto {
   title: string;
   /** The question to a person; where the numbers answer, what they say: '21 °C, allowed 10–45 °C'. */
   question: string;
-  /** What it is about, or where the answer comes from: 'Answered from the reading at 13:37. Locked.' */
+  /** What it is about, or where the answer comes from: 'Answered from the reading at 13:37 by Ines Marlow. Locked.' */
   detail: string;
   /** Words on the two answers; the given one stands behind the title afterwards. Empty where the numbers answer. */
   yes: string;

@@ -68,21 +68,36 @@ function startWorker(windows: FakeWindow[]) {
     listeners.get(name)?.({ ...event, waitUntil: (work: Promise<unknown>) => waits.push(work) });
     await Promise.all(waits);
   }
-  const click = (url?: string) => fire('notificationclick', { notification: { close: () => undefined, data: { url } } });
+  const click = (url?: string) =>
+    fire('notificationclick', { notification: { close: () => undefined, data: { url } } });
   return { fire, click, shown, opened, tookOver: () => tookOver };
 }
 
-const page = (address: string, answers = true): FakeWindow => ({ url: origin + address, answers, focused: false, asked: [], navigatedTo: null });
+const page = (address: string, answers = true): FakeWindow => ({
+  url: origin + address,
+  answers,
+  focused: false,
+  asked: [],
+  navigatedTo: null,
+});
 
 describe('a notice', () => {
   let worker: ReturnType<typeof startWorker>;
   beforeEach(() => (worker = startWorker([])));
 
   test('posted by a page is shown with its cause as tag, so that a second one of the same cause replaces it', async () => {
-    const notice = { title: 'R-214 is due for its check', body: 'Rested since 13:40', url: '/charges/c1', tag: 'alert-7' };
+    const notice = {
+      title: 'R-214 is due for its check',
+      body: 'Rested since 13:40',
+      url: '/charges/c1',
+      tag: 'alert-7',
+    };
     await worker.fire('message', { data: { type: 'notify', notice } });
     expect(worker.shown).toHaveLength(1);
-    expect(worker.shown[0]).toMatchObject({ title: notice.title, options: { body: notice.body, tag: 'alert-7', data: { url: `${origin}/charges/c1` } } });
+    expect(worker.shown[0]).toMatchObject({
+      title: notice.title,
+      options: { body: notice.body, tag: 'alert-7', data: { url: `${origin}/charges/c1` } },
+    });
   });
 
   test('pushed as JSON is shown; pushed as bare text is shown as its words', async () => {
@@ -118,7 +133,11 @@ describe('a tap on a notice', () => {
     const windows = [page('/bench')];
     const worker = startWorker(windows);
     await worker.click('/charges/c1');
-    expect(windows[0]).toMatchObject({ focused: true, asked: [{ type: 'open', url: `${origin}/charges/c1` }], navigatedTo: null });
+    expect(windows[0]).toMatchObject({
+      focused: true,
+      asked: [{ type: 'open', url: `${origin}/charges/c1` }],
+      navigatedTo: null,
+    });
   });
 
   test('takes a page there that does not answer within a second', async () => {

@@ -13,15 +13,22 @@ import {
   stranger,
   words,
   type House,
+  type ScreenSize,
 } from './house';
 
-describeInBrowser('a manager', () => {
+const sizes: { size: ScreenSize; other: ScreenSize }[] = [
+  { size: 'wide', other: 'phone' },
+  { size: 'phone', other: 'wide' },
+];
+
+describeInBrowser.each(sizes)('a manager on a $size screen', ({ size, other }) => {
+  const name = (step: string) => `manager-${step}-${size}`;
   let house: House;
   let manager: Visitor;
   beforeAll(async () => {
     house = await openHouse();
     manager = await member(house, 'manager', '/workshop?section=people', {
-      size: 'wide',
+      size,
       // Refused once on purpose: a change over somebody else's.
       expected: [/status of 412/],
     });
@@ -33,7 +40,7 @@ describeInBrowser('a manager', () => {
   test('invites a person by a link that is shown once; the person joins with a password, a common one is refused with the reason', async () => {
     const { page } = manager;
     await heading(page, 'Invite a person').waitFor();
-    await judge(manager, 'manager-workshop');
+    await judge(manager, name('workshop'));
     await field(page, 'E-mail').fill('tove at harbourlane');
     await button(page, 'Make the invitation').click();
     await expect.poll(() => sentenceAt(field(page, 'E-mail')), patience).toMatch(/[.?]$/);
@@ -49,12 +56,12 @@ describeInBrowser('a manager', () => {
     const url = (await shown.textContent()) ?? '';
     expect(url.startsWith(`${house.server.url}/join?token=`)).toBe(true);
     await words(page, /It is shown only now\./).waitFor();
-    await judge(manager, 'manager-invited');
+    await judge(manager, name('invited'));
     await page.reload();
     await words(page, 'tove@harbourlane.example.com').waitFor();
     expect(await page.getByText(/\/join\?token=/).count()).toBe(0);
 
-    joined = await stranger(house, { size: 'phone', expected: [/status of 40[01]/] });
+    joined = await stranger(house, { size: other, expected: [/status of 40[01]/] });
     await joined.page.goto(url.slice(house.server.url.length));
     await heading(joined.page, 'Join Harbour Lane Traction').waitFor();
     await words(joined.page, 'tove@harbourlane.example.com').waitFor();
@@ -69,7 +76,7 @@ describeInBrowser('a manager', () => {
       await expect.poll(() => joined.page.locator('#root').innerText(), patience).toMatch(reason);
       expect(await field(joined.page, 'Your name').inputValue()).toBe('Tove Linden');
     }
-    await judge(joined, 'manager-join-refused');
+    await judge(joined, name('join-refused'));
     await password.fill('seven lamps over 9 benches');
     await button(joined.page, 'Join the workshop').click();
     await joined.page.waitForURL('**/bench');
@@ -92,7 +99,7 @@ describeInBrowser('a manager', () => {
       .locator('visible=true')
       .first()
       .click();
-    await judge(manager, 'manager-person');
+    await judge(manager, name('person'));
     await button(page, 'Save the person').click();
     await words(page, 'Tove Linden is saved.').waitFor();
 
@@ -118,7 +125,7 @@ describeInBrowser('a manager', () => {
     const begun = Date.now();
     await words(joined.page, /A manager has switched this access off/).waitFor();
     expect(Date.now() - begun).toBeLessThan(5000);
-    await judge(joined, 'manager-disabled');
+    await judge(joined, name('disabled'));
     const status = await joined.page.evaluate(async () => (await fetch('/api/board')).status);
     expect(status).toBe(401);
     await joined.close();
@@ -149,7 +156,7 @@ describeInBrowser('a manager', () => {
     await button(page, 'Save the charger').click();
     await expect.poll(() => sentenceAt(field(channel, 'Current')), patience).toMatch(/[.?]$/);
     expect(await field(channel, 'Current').inputValue()).toBe('-5 A');
-    await judge(manager, 'manager-charger-bad');
+    await judge(manager, name('charger-bad'));
     await field(channel, 'Current').fill('15');
     await button(page, 'Save the charger').click();
     await words(page, 'Trolley supply is saved.').waitFor();
@@ -170,7 +177,7 @@ describeInBrowser('a manager', () => {
       ['Charge up to', '45'],
     ] as const)
       await field(page, label).fill(value);
-    await judge(manager, 'manager-type');
+    await judge(manager, name('type'));
     await button(page, 'Save the type').click();
     await words(page, '8-series 40 Ah is saved.').waitFor();
 
@@ -191,30 +198,30 @@ describeInBrowser('a manager', () => {
   });
 
   test('two managers change the limits at once: the second is told what stands now, keeps what was typed, and may save over it', async () => {
-    const other = await member(house, 'manager', '/workshop/limits', { size: 'phone' });
+    const second = await member(house, 'manager', '/workshop/limits', { size: other });
     const { page } = manager;
     await page.goto('/workshop/limits');
     await field(page, 'Rest at least').fill('45');
-    await field(other.page, 'Tolerance').fill('4');
-    await button(other.page, 'Save the limits').click();
-    await words(other.page, 'The limits are saved.').waitFor();
+    await field(second.page, 'Tolerance').fill('4');
+    await button(second.page, 'Save the limits').click();
+    await words(second.page, 'The limits are saved.').waitFor();
 
     await button(page, 'Save the limits').click();
     await words(page, 'The workshop was changed by somebody else meanwhile.').waitFor();
     const table = page.getByRole('table', { name: 'What differs' });
     await expect.poll(() => table.innerText(), patience).toMatch(/Tolerance\s+4\s+5/);
     expect(await field(page, 'Rest at least').inputValue()).toBe('45');
-    await judge(manager, 'manager-412');
+    await judge(manager, name('412'));
     // The own change over the other's: the other's tolerance is put into the form first.
     await field(page, 'Tolerance').fill('4');
     await button(page, 'Save mine over it').click();
     await words(page, 'The limits are saved.').waitFor();
     const stands = await page.evaluate(async () => (await (await fetch('/api/workshop')).json()) as object);
     expect(stands).toMatchObject({ toleranceMillivolts: 4, minRestMinutes: 45 });
-    await other.page.goto('/workshop/limits');
-    await expect.poll(() => field(other.page, 'Rest at least').inputValue(), patience).toBe('45');
-    expect([...manager.problems, ...other.problems]).toEqual([]);
-    await other.close();
+    await second.page.goto('/workshop/limits');
+    await expect.poll(() => field(second.page, 'Rest at least').inputValue(), patience).toBe('45');
+    expect([...manager.problems, ...second.problems]).toEqual([]);
+    await second.close();
     await link(page, /limits/)
       .first()
       .waitFor();

@@ -8,12 +8,12 @@ import { useModuleTypes } from '@/shared/client/module-types';
 import { useSpares } from '@/shared/client/spares';
 import { Button } from '@/shared/ui/primitives/button';
 import { IconButton } from '@/shared/ui/primitives/icon-button';
+import { SearchBox } from '@/shared/ui/primitives/search-box';
 import { SegmentSwitch } from '@/shared/ui/primitives/segment-switch';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { Columns } from '@/shared/ui/screen/columns';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
-import { SearchBox } from '@/shared/ui/spare/search-box';
 import { SpareList } from '@/shared/ui/spare/spare-list';
 import { stockItems } from '@/shared/ui/spare/spare-model';
 import { SpareSide } from '@/shared/ui/spare/spare-side';
@@ -50,7 +50,7 @@ export default function Spares() {
   const takeIn = () => router.push('/spares/new' as Href);
   const shelf = all.filter((spare) => spare.where === 'shelf').length;
   const quarantine = all.filter((spare) => spare.where === 'quarantine').length;
-  const search = <SearchBox value={looked} onChange={setLooked} />;
+  const search = <SearchBox label="Label, type or shelf" value={looked} onChange={setLooked} />;
   const places = (
     <SegmentSwitch<Where>
       label="Where"

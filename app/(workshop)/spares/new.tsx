@@ -1,9 +1,10 @@
 import { useRouter, type Href } from 'expo-router';
-import { useMemo } from 'react';
+import { useMemo, useState } from 'react';
 import { useWatch } from 'react-hook-form';
 import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
+import { useLastMeter } from '@/shared/client/last-meter';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useModuleTypes } from '@/shared/client/module-types';
@@ -61,8 +62,6 @@ export default function NewSpare() {
   );
 }
 
-const initial: NewSpareTyped = { ...emptySpare, reading: emptyReading(1) };
-
 function Form({
   types,
   meters,
@@ -74,6 +73,8 @@ function Form({
 }) {
   const router = useRouter();
   const add = useAddSpare();
+  const meter = useLastMeter();
+  const [initial] = useState<NewSpareTyped>(() => ({ ...emptySpare, reading: emptyReading(1, meter.firstOf(meters)) }));
   const offline = useLink().state === 'down';
   const schema = useMemo(() => newSpareForm((id) => types.find((type) => type.id === id)), [types]);
   const f = useContractForm({
@@ -82,6 +83,7 @@ function Form({
     draft: 'spare.new',
     send: async (output) => {
       const spare = await add.mutateAsync(output);
+      meter.keep(output.reading.meterId);
       router.replace(`/spares/${spare.id}` as Href);
     },
   });

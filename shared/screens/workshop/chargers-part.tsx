@@ -5,6 +5,7 @@ import { useGate } from '@/shared/client/gate';
 import { useMeters } from '@/shared/client/meters';
 import { partState } from '@/shared/client/part-state';
 import { Link } from '@/shared/ui/primitives/link';
+import { Searched } from '@/shared/ui/primitives/searched';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { ChargersTable } from '@/shared/ui/workshop/chargers-table';
 import { whoMay } from '@/shared/ui/workshop/may-change';
@@ -42,13 +43,23 @@ export function ChargersPart({ titled }: PartProps) {
       {own.length === 0 ? (
         <NothingYet words="No charger yet. Nothing can be planned without one." />
       ) : (
-        <ChargersTable
-          chargers={own}
-          meters={meters.data ?? []}
-          now={now}
-          mayChange={gate.may}
-          onEdit={(charger) => go(`/workshop/chargers/${charger.id}`)}
-        />
+        <Searched
+          items={own}
+          rows={own.reduce((sum, charger) => sum + charger.channels.length, 0)}
+          label="Charger, place or channel"
+          one="charger"
+          textsOf={({ name, place, channels }) => [name, place, ...channels.map((channel) => channel.name)]}
+        >
+          {(found) => (
+            <ChargersTable
+              chargers={found}
+              meters={meters.data ?? []}
+              now={now}
+              mayChange={gate.may}
+              onEdit={(charger) => go(`/workshop/chargers/${charger.id}`)}
+            />
+          )}
+        </Searched>
       )}
       <OldChecks words={oldChecks(named, now)} />
       {retired.length > 0 ? (

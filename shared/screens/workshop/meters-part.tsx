@@ -2,6 +2,7 @@ import { useNow } from '@/shared/client/clock';
 import { useGate } from '@/shared/client/gate';
 import { useMeters } from '@/shared/client/meters';
 import { partState } from '@/shared/client/part-state';
+import { Searched } from '@/shared/ui/primitives/searched';
 import { whoMay } from '@/shared/ui/workshop/may-change';
 import { oldChecks } from '@/shared/ui/workshop/meter-age';
 import { SectionBlock } from '@/shared/ui/workshop/section-block';
@@ -31,12 +32,16 @@ export function MetersPart({ titled }: PartProps) {
       {meters.data?.length === 0 ? (
         <NothingYet words="No meter yet. Readings without one widen the band." />
       ) : (
-        <MetersTable
-          meters={meters.data ?? []}
-          now={now}
-          mayChange={gate.may}
-          onEdit={(meter) => go(`/workshop/meters/${meter.id}`)}
-        />
+        <Searched items={meters.data ?? []} label="Name of the meter" one="meter" textsOf={({ name }) => [name]}>
+          {(found) => (
+            <MetersTable
+              meters={found}
+              now={now}
+              mayChange={gate.may}
+              onEdit={(meter) => go(`/workshop/meters/${meter.id}`)}
+            />
+          )}
+        </Searched>
       )}
       <OldChecks words={oldChecks(meters.data ?? [], now)} />
     </SectionBlock>

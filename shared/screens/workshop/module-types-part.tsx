@@ -1,6 +1,8 @@
 import { useGate } from '@/shared/client/gate';
 import { useModuleTypes } from '@/shared/client/module-types';
 import { partState } from '@/shared/client/part-state';
+import { chemistryNames } from '@/shared/contract/equipment';
+import { Searched } from '@/shared/ui/primitives/searched';
 import { whoMay } from '@/shared/ui/workshop/may-change';
 import { SectionBlock } from '@/shared/ui/workshop/section-block';
 import { TypesTable } from '@/shared/ui/workshop/types-table';
@@ -28,7 +30,14 @@ export function ModuleTypesPart({ titled }: PartProps) {
       {types.data?.length === 0 ? (
         <NothingYet words="No module type yet. Every spare is of one." />
       ) : (
-        <TypesTable types={types.data ?? []} onOpen={(type) => go(`/workshop/module-types/${type.id}`)} />
+        <Searched
+          items={types.data ?? []}
+          label="Name or chemistry"
+          one="module type"
+          textsOf={({ name, chemistry }) => [name, chemistryNames[chemistry]]}
+        >
+          {(found) => <TypesTable types={found} onOpen={(type) => go(`/workshop/module-types/${type.id}`)} />}
+        </Searched>
       )}
     </SectionBlock>
   );

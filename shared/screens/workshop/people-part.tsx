@@ -7,10 +7,12 @@ import { useInvitations, usePeople, useRecallInvitation } from '@/shared/client/
 import type { InvitationDto } from '@/shared/contract/people';
 import { ProblemLine } from '@/shared/ui/auth/problem-line';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
+import { Searched } from '@/shared/ui/primitives/searched';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { whoMay } from '@/shared/ui/workshop/may-change';
 import { PeopleTable } from '@/shared/ui/workshop/people-table';
+import { roleWords } from '@/shared/ui/workshop/role-words';
 import { SectionBlock } from '@/shared/ui/workshop/section-block';
 import type { PartProps } from './part-props';
 import { useGo } from './use-go';
@@ -46,14 +48,30 @@ export function PeoplePart({ titled }: PartProps) {
       onRetry={retry}
       note={whoMay(gate)}
     >
-      <PeopleTable
-        people={people.data ?? []}
-        invitations={invitations.data ?? []}
-        now={now}
-        mayChange={gate.may}
-        onEdit={(person) => go(`/workshop/people/${person.id}`)}
-        onRecall={setAsked}
-      />
+      <Searched
+        items={[
+          ...(people.data ?? []).map((person) => ({ person, invitation: null })),
+          ...(invitations.data ?? []).map((invitation) => ({ person: null, invitation })),
+        ]}
+        label="Name, role or e-mail"
+        one="person"
+        textsOf={({ person, invitation }) => [
+          person?.name ?? null,
+          (person ?? invitation).email,
+          roleWords[(person ?? invitation).role].title,
+        ]}
+      >
+        {(found) => (
+          <PeopleTable
+            people={found.flatMap(({ person }) => person ?? [])}
+            invitations={found.flatMap(({ invitation }) => invitation ?? [])}
+            now={now}
+            mayChange={gate.may}
+            onEdit={(person) => go(`/workshop/people/${person.id}`)}
+            onRecall={setAsked}
+          />
+        )}
+      </Searched>
       <ProblemLine text={recall.error ? sentenceOf(recall.error) : null} />
       <ConfirmSheet
         open={asked !== null}

@@ -1,6 +1,7 @@
 import { useGate } from '@/shared/client/gate';
 import { partState } from '@/shared/client/part-state';
 import { useResistors } from '@/shared/client/resistors';
+import { Searched } from '@/shared/ui/primitives/searched';
 import { whoMay } from '@/shared/ui/workshop/may-change';
 import { SectionBlock } from '@/shared/ui/workshop/section-block';
 import { ResistorsTable } from '@/shared/ui/workshop/small-tables';
@@ -28,11 +29,20 @@ export function ResistorsPart({ titled }: PartProps) {
       {resistors.data?.length === 0 ? (
         <NothingYet words="No levelling resistor yet. Unequal groups are brought level by charging alone." />
       ) : (
-        <ResistorsTable
-          resistors={resistors.data ?? []}
-          mayChange={gate.may}
-          onEdit={(resistor) => go(`/workshop/resistors/${resistor.id}`)}
-        />
+        <Searched
+          items={resistors.data ?? []}
+          label="Name of the resistor"
+          one="levelling resistor"
+          textsOf={({ name }) => [name]}
+        >
+          {(found) => (
+            <ResistorsTable
+              resistors={found}
+              mayChange={gate.may}
+              onEdit={(resistor) => go(`/workshop/resistors/${resistor.id}`)}
+            />
+          )}
+        </Searched>
       )}
     </SectionBlock>
   );

@@ -2,6 +2,8 @@
 import * as z from 'zod/mini';
 import { correctReadingSchema, type ReadingDto, type ReadingInput } from '@/shared/contract/charge';
 import { groupVoltsProblem, type TypeWindow } from '@/shared/contract/group-volts';
+import type { Direction } from '@/shared/contract/plan';
+import { ampsProblem } from '@/shared/contract/reading-amps';
 import { clock } from '../format/clock';
 import type { LocaleMarks } from '../format/marks';
 import { parseTimeOfDay, timeOfDayText } from '../format/parse';
@@ -62,11 +64,14 @@ const underCurrentVolts = 0.5;
  */
 export const logSchema = ({
   window,
+  direction,
   zone,
   now,
   atOf = (text) => latestInstant(text, zone, now()),
 }: {
   window: TypeWindow;
+  /** Of the step under way. */
+  direction: Direction;
   zone: string;
   now: () => number;
   atOf?: (text: string) => number | null;
@@ -104,6 +109,8 @@ export const logSchema = ({
       open.length === values.groupVolts.length
     )
       issue('Type at least one number that was read.', nothingTyped);
+    const wrongWay = amps === null ? null : ampsProblem(amps, direction);
+    if (wrongWay !== null) issue(wrongWay, 'amps');
     groupVolts?.forEach((volts, group) => {
       if (volts <= window.chargeLimitVolts + underCurrentVolts) return;
       const problem = groupVoltsProblem(volts, window);

@@ -88,9 +88,12 @@ export function dayName(day: string, today: string): string {
   return `${weekdayOf(day).slice(0, 3)}${NBSP}${dayOfMonth}${NBSP}${months[month - 1] ?? ''}`;
 }
 
-/** Moves an estimated instant to the minutes that are told: to 5, within an hour of now to 1. */
+/** To how many minutes an estimated instant is told: to 5, within an hour of now to 1. */
+const toldMinutes = (likely: number, now: number): 5 | 1 => (likely - now >= 3_570_000 ? 5 : 1);
+
+/** Moves an estimated instant to the minutes that are told. */
 export function told(instant: number, likely: number, now: number): number {
-  const step = (likely - now >= 3_570_000 ? 5 : 1) * 60_000;
+  const step = toldMinutes(likely, now) * 60_000;
   return Math.round(instant / step) * step;
 }
 
@@ -103,7 +106,7 @@ export const readyAt = (band: InstantBand, zone: string, now: number, marks = po
 
 /**
  * Its band: '16:40–18:05'; a bound on another day than the likely one says its weekday. Where only a timer is left to run
- * both ends are one minute: 'to the minute'.
+ * both ends are one minute: 'to the minute'; farther off than an hour, where 5 min are told: 'to 5 min'.
  */
 export function readyBounds(band: InstantBand, zone: string, now: number, marks = pointMarks): string {
   const likelyDay = dayOf(told(band.p50, band.p50, now), zone);
@@ -114,7 +117,8 @@ export function readyBounds(band: InstantBand, zone: string, now: number, marks 
     return day === likelyDay ? text : `${weekdayOf(day).slice(0, 3)}${NBSP}${text}`;
   };
   const [early, late] = [bound(band.p10), bound(band.p90)];
-  return early === late ? 'to the minute' : `${early}${EN_DASH}${late}`;
+  if (early === late) return toldMinutes(band.p50, now) === 1 ? 'to the minute' : `to 5${NBSP}min`;
+  return `${early}${EN_DASH}${late}`;
 }
 
 /** 'ready 17:05 (16:40–18:05)' */

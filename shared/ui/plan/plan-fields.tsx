@@ -3,9 +3,6 @@ import { View } from 'react-native';
 import type { ChemistryId } from '@/calc/plan-types';
 import type { MeterDto } from '@/shared/contract/equipment';
 import type { SpareDto } from '@/shared/contract/spare';
-import { useFormats } from '../format/formats';
-import { volts } from '../format/quantities';
-import { readBeforeWords } from '../spare/spare-words';
 import { DateTimeField } from '../primitives/date-time-field';
 import { Field } from '../primitives/field';
 import { Link } from '../primitives/link';
@@ -13,6 +10,7 @@ import { SegmentSwitch } from '../primitives/segment-switch';
 import { Select } from '../primitives/select';
 import { makeStyles } from '../theme/make-styles';
 import { flatChemistries, isBySoc, type PlanField, type PlanTyped } from './plan-typed';
+import { SpareChoice } from './spare-choice';
 
 /** From spare to pack: everything a plan is made of, typed. */
 export function PlanFields({
@@ -39,22 +37,6 @@ export function PlanFields({
   onLeave: (field: PlanField) => void;
 }) {
   const styles = useStyles();
-  const { marks } = useFormats();
-  const spareWords = (spare: SpareDto) => {
-    const lowest =
-      readBeforeWords(spare) !== null
-        ? ', to be read again'
-        : spare.reading
-          ? `, ${volts(Math.min(...spare.reading.groupVolts), marks)}`
-          : '';
-    const where =
-      spare.where === 'shelf'
-        ? spare.shelfPlace
-          ? `, ${spare.shelfPlace}`
-          : ''
-        : `, ${spare.where === 'charge' ? 'on a charge' : spare.where}`;
-    return `${spare.label} · ${spare.typeName}${lowest}${where}`;
-  };
   const field = (name: PlanField) => ({
     value: typed[name],
     error: errors[name],
@@ -71,15 +53,12 @@ export function PlanFields({
   const bySoc = isBySoc(typed, chemistry);
   return (
     <View style={styles.form}>
-      <Select
-        label="Spare"
-        empty={spares ? 'Choose a spare' : 'Reading the stock'}
-        value={typed.spareId || null}
-        options={(spares ?? []).map((spare) => ({ value: spare.id, label: spareWords(spare) }))}
-        onChange={(spareId) => onChange({ spareId })}
-        onBlur={() => onLeave('spareId')}
+      <SpareChoice
+        spares={spares}
+        spareId={typed.spareId}
         error={errors.spareId}
-        required
+        onChange={(spareId) => onChange({ spareId })}
+        onLeave={() => onLeave('spareId')}
       />
       {flat ? (
         <SegmentSwitch

@@ -60,6 +60,7 @@ export function DateTimeField({
 }
 
 const styles = StyleSheet.create({
-  row: { flexDirection: 'row', columnGap: 12 },
-  half: { flex: 1, minWidth: 0 },
+  row: { flexDirection: 'row', flexWrap: 'wrap', columnGap: 12, rowGap: 12 },
+  // Narrower than this '17:30' runs under its clock: in the desk's narrow column the day goes below.
+  half: { flex: 1, minWidth: 140 },
 });

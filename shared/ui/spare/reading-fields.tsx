@@ -1,4 +1,5 @@
-import { useWatch, type FieldPath, type FieldValues, type UseFormReturn } from 'react-hook-form';
+import type { Ref } from 'react';
+import { useController, useWatch, type FieldPath, type FieldValues, type UseFormReturn } from 'react-hook-form';
 import { View } from 'react-native';
 import type { MeterDto } from '@/shared/contract/equipment';
 import { groupVoltsProblem, type TypeWindow } from '@/shared/contract/group-volts';
@@ -8,12 +9,13 @@ import { useFormats } from '../format/formats';
 import { parseNumber, typedDecimals } from '../format/parse';
 import { clipVolts, millivolts } from '../format/quantities';
 import { Caution } from '../primitives/call-out';
-import { Field } from '../primitives/field';
+import { Field, type FieldHandle } from '../primitives/field';
 import { Select } from '../primitives/select';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { TypedField } from './typed-field';
 
+const notKnown = 'none';
 const voltsRule: QuantityRule = { name: 'The voltage', unit: 'V', min: 0 };
 
 /** Group voltages at rest with the meter and the temperature they were read at. The Next key walks the groups. */
@@ -93,24 +95,42 @@ export function ReadingFields<Values extends FieldValues>({
         <TypedField form={form} name={at('celsius')}>
           {(field) => <Field label="Module is at" kind="decimal" unit="°C" {...field} />}
         </TypedField>
-        <TypedField form={form} name={at('meterId')}>
-          {({ value, onChange, onBlur, error, ref }) => (
-            <Select
-              ref={ref}
-              label="Read with"
-              error={error}
-              onBlur={onBlur}
-              value={value || 'none'}
-              onChange={(id) => onChange((id === 'none' ? null : id) as string)}
-              options={[
-                { value: 'none', label: 'not known' },
-                ...meters.map((meter) => ({ value: meter.id, label: meter.name })),
-              ]}
-            />
-          )}
-        </TypedField>
+        <ReadWith form={form} name={at('meterId')} meters={meters} />
       </FieldPair>
     </View>
+  );
+}
+
+/** The meter: named, or said to be not known. Nothing stands there till one of them is chosen. */
+function ReadWith<Values extends FieldValues>({
+  form,
+  name,
+  meters,
+}: {
+  form: UseFormReturn<Values, unknown, Values>;
+  name: FieldPath<Values>;
+  meters: readonly MeterDto[];
+}) {
+  const {
+    field: { ref, value: typed, onChange, onBlur },
+    fieldState,
+  } = useController({ control: form.control, name });
+  const value = typed as string | null;
+  return (
+    <Select
+      ref={ref as Ref<FieldHandle>}
+      label="Read with"
+      empty="Choose the meter"
+      required
+      error={fieldState.error && (value === '' ? 'Choose the meter, or not known.' : fieldState.error.message)}
+      onBlur={onBlur}
+      value={value === null ? notKnown : value || null}
+      onChange={(id) => onChange(id === notKnown ? null : id)}
+      options={[
+        ...meters.map((meter) => ({ value: meter.id, label: meter.name })),
+        { value: notKnown, label: 'not known' },
+      ]}
+    />
   );
 }
 

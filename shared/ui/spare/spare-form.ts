@@ -28,6 +28,7 @@ export interface SpareTyped {
 export interface ReadingTyped {
   groupVolts: string[];
   celsius: string;
+  /** null: not known, which somebody has to say. '': not chosen yet. */
   meterId: string | null;
   note: string;
 }
@@ -42,7 +43,7 @@ export interface DatedReadingTyped extends ReadingTyped {
   time: string;
 }
 
-export const emptyReading = (groups: number, meterId: string | null = null): ReadingTyped => ({
+export const emptyReading = (groups: number, meterId: string | null): ReadingTyped => ({
   groupVolts: Array.from({ length: groups }, () => ''),
   celsius: '',
   meterId,

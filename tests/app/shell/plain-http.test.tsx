@@ -25,11 +25,12 @@ const ready = charge('ready', {
       early: false,
       verdict: {
         within: true,
-        groups: [3.906, 3.905, 3.902].map((volts) => ({
+        groups: [3.906, 3.905, 3.902].map((volts, group) => ({
+          group,
           volts,
           deviationVolts: volts - 3.905,
           within: true,
-          neededAh: 0,
+          ampHoursToGo: 0,
         })),
         spreadVolts: 0.004,
         worstGroup: 2,

@@ -37,7 +37,9 @@ describe('the checks before clipping on', () => {
     expect(item(charge, 'temperature')).toMatchObject({
       by: 'data',
       question: '21\u00a0°C, allowed 10–45\u00a0°C',
-      detail: 'Answered from the reading at 10:00. Locked.',
+      detail: 'Answered from the reading at 10:00 by Technician of own. Locked.',
+      answeredBy: { id: 'own-technician' },
+      answeredAt: new Date(bench.server.clock.now() - 1).toISOString(),
     });
     const locked = await answer(charge.id, 'temperature', 'yes');
     expect(locked.status).toBe(422);
@@ -184,6 +186,33 @@ describe('the checks before clipping on', () => {
     expect(now.startBlockedBy).toContain('A1 gives 9.00\u00a0V and cannot be set lower.');
   });
 
+  test('a trim channel that was changed after the plan is looked at before the bulk begins', async () => {
+    const wish = { spareId: await bench.spare('S-0417', [3.802, 3.87]) };
+    const charge = await answered(bench, await kept(bench, wish));
+    expect(charge.option.steps.map((step) => [step.kind, step.channelIds[0]])).toEqual([
+      ['bulk', bench.channels.A1],
+      ['trim', bench.channels.B1],
+    ]);
+    const trim = charge.option.steps[1]!;
+    expect(trim.direction).toBe('charge');
+    const change = (patch: Partial<Channel>) =>
+      bench.server.deps.dataSource.manager.update(Channel, { id: bench.channels.B1 }, patch);
+    await change({ adjustableVolts: false, maxVolts: 5 });
+    const fixed = await seen(bench, charge.id);
+    expect(item(fixed, 'ceiling')).toMatchObject({ by: 'ruled-out' });
+    const group = trim.groupIndexes[0]! + 1;
+    expect(fixed.startBlockedBy).toMatch(
+      new RegExp(
+        `^B1 gives 5\\.00\u00a0V and cannot be set lower\\. Group ${group} takes [34]\\.\\d\\d\u00a0V from it at most\\.`,
+      ),
+    );
+    expect((await act(bench, fixed, 'start')).body).toMatchObject({ code: 'ruled_out' });
+    await change({ adjustableVolts: true, maxVolts: 60, retired: true });
+    expect((await seen(bench, charge.id)).startBlockedBy).toContain('B1 is out of use.');
+    await change({ retired: false });
+    expect((await seen(bench, charge.id)).startBlockedBy).toBeNull();
+  });
+
   test('an open answer keeps the timer from starting: 422 with the present checks', async () => {
     const charge = await kept(bench, { spareId: await bench.spare('S-0417') });
     const refused = await act(bench, charge, 'start');
@@ -195,10 +224,16 @@ describe('the checks before clipping on', () => {
   test('after the start the checks are closed and show what was known then', async () => {
     const charge = await running(bench, { spareId: await bench.spare('S-0417') });
     bench.server.clock.advance(24 * hour);
-    expect(item(await seen(bench, charge.id), 'temperature')).toMatchObject({
+    const temperature = item(await seen(bench, charge.id), 'temperature');
+    expect(temperature).toMatchObject({
       by: 'data',
       question: '21\u00a0°C, allowed 10–45\u00a0°C',
+      answeredBy: { id: 'own-technician' },
     });
+    // The reading of 10:00 the day before, not the start.
+    expect(temperature.detail).toMatch(
+      /^Answered from the reading at [A-Z][a-z]{2} 10:00 by Technician of own\. Locked\.$/,
+    );
     expect((await answer(charge.id, 'isolation', 'no')).body).toMatchObject({ code: 'wrong_stage' });
   });
 

@@ -38,6 +38,22 @@ describe('the check', () => {
     expect(await openKinds()).not.toContain('check-due');
   });
 
+  test('3.96 as it is typed is too coarse for ±5 mV and is refused at its field; a number says what it means', async () => {
+    const charge = await due();
+    const body = { groupVolts: ['3.949', '3.96'], celsius: '21', meterId: bench.meterId };
+    const refused = await act(bench, charge, 'rest-check', body);
+    expect(refused.status).toBe(400);
+    expect((refused.body as { fields: object }).fields).toEqual({
+      'groupVolts.1': 'Two decimals are not enough to judge 5\u00a0mV. Type three.',
+    });
+    const one = await act(bench, charge, 'rest-check', { ...body, groupVolts: ['3.949'] });
+    expect((one.body as { fields: object }).fields).toEqual({
+      groupVolts: 'This type has 2 groups; 1 voltage was typed.',
+    });
+    const judged = await did(bench, charge, 'rest-check', { ...body, groupVolts: ['3,949 V', 3.95] });
+    expect(judged.restChecks[0]!.groupVolts).toEqual([3.949, 3.95]);
+  });
+
   test('the known offset of the meter is taken off before the verdict', async () => {
     const charge = await due();
     const meter = await bench

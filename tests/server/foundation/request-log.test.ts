@@ -27,6 +27,27 @@ beforeEach(async () => {
 });
 afterEach(() => server.close());
 
+describe('a proxy in front', () => {
+  const forwarded = (app: typeof server.app) => request(app).get('/healthz').set('X-Forwarded-For', '198.51.100.4');
+  const warned = () => lines().filter((line) => String(line.msg).includes('BIDEWELL_PROXY_HOPS'));
+
+  it('whose forwarded addresses are not believed is said once, not with every request', async () => {
+    await request(server.app).get('/healthz');
+    expect(warned()).toEqual([]);
+    await forwarded(server.app);
+    await forwarded(server.app);
+    expect(warned()).toHaveLength(1);
+    expect(warned()[0]).toMatchObject({ level: 40 });
+  });
+
+  it('that is believed is not spoken of', async () => {
+    const behind = await makeTestServer({ config: { proxyHops: 1 }, deps: { log: makeLog('debug', sink()) } });
+    await forwarded(behind.app);
+    expect(warned()).toEqual([]);
+    await behind.close();
+  });
+});
+
 describe('the log', () => {
   it('holds no password, token, cookie or link, whatever the request', async () => {
     const { email } = server.own.people.technician;

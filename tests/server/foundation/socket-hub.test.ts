@@ -180,7 +180,7 @@ describe('an announcement', () => {
     expect(others).toEqual(['people:changed']);
   });
 
-  it('reaches a wall only where it concerns the board', async () => {
+  it('reaches a wall only where it concerns the board: charges, channels, not people, stock or alerts', async () => {
     await addWall();
     const wall = await ready(connect({ as: 'wall', cookie: wallCookie }));
     const heard: string[] = [];
@@ -191,7 +191,7 @@ describe('an announcement', () => {
     const last = once(wall, 'board:changed');
     hub.toWorkshop(server.own.id, 'board:changed', { rev: 1, at: '', chargeId: null });
     await last;
-    expect(heard).toEqual(['board:changed']);
+    expect(heard).toEqual(['equipment:changed', 'board:changed']);
   });
 });
 

@@ -199,12 +199,14 @@ afterAll(() => {
 function spawnServer(folder: string, env: Record<string, string> = {}) {
   const child = spawn(process.execPath, [path.join(bundle, 'main.js')], {
     env: { ...process.env, PORT: '0', BIDEWELL_DATA: folder, BIDEWELL_DEMO: 'off', BIDEWELL_HOST: '127.0.0.1', ...env },
-    stdio: ['ignore', 'pipe', 'pipe'],
+    stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
   });
   children.push(child);
+  const told: unknown[] = [];
+  child.on('message', (message) => told.push(message));
   let output = '';
-  child.stdout.on('data', (chunk: Buffer) => (output += chunk.toString()));
-  child.stderr.on('data', (chunk: Buffer) => (output += chunk.toString()));
+  child.stdout?.on('data', (chunk: Buffer) => (output += chunk.toString()));
+  child.stderr?.on('data', (chunk: Buffer) => (output += chunk.toString()));
   const exit = new Promise<number | null>((resolve) => child.once('exit', resolve));
   /** Waits until the process has written something of this form; gives its first group. */
   const said = async (form: RegExp): Promise<string> => {
@@ -215,7 +217,7 @@ function spawnServer(folder: string, env: Record<string, string> = {}) {
       await new Promise((resolve) => setTimeout(resolve, 20));
     }
   };
-  return { child, exit, said, output: () => output };
+  return { child, exit, said, told, output: () => output };
 }
 
 /** Begins to send a body and stops half way, when the server has read the head and asked for more. */
@@ -266,6 +268,29 @@ describe('the process', () => {
     child.kill('SIGTERM');
     expect(await exit).toBe(1);
     await expect(status).rejects.toThrow();
+  });
+
+  it('tells whoever started it where it listens, also where the port was chosen for it', async () => {
+    const { child, exit, said, told } = spawnServer(newFolder(), { BIDEWELL_HOST: '0.0.0.0' });
+    const address = await said(/"address":"([^"]+)"/);
+    const { port } = new URL(address);
+    expect(Number(port)).toBeGreaterThan(0);
+    await expect
+      .poll(() => told)
+      .toEqual([{ ready: { address: `http://localhost:${port}`, port: Number(port), demo: false, everywhere: true } }]);
+    child.kill('SIGTERM');
+    expect(await exit).toBe(0);
+  });
+
+  it('beside one that has the port tells nothing of being ready, says that the port is taken, and exits with 1', async () => {
+    const first = spawnServer(newFolder());
+    const { port } = new URL(await first.said(/"address":"([^"]+)"/));
+    const second = spawnServer(newFolder(), { PORT: port });
+    expect(await second.exit).toBe(1);
+    expect(second.output()).toContain(`Port ${port} is taken`);
+    expect(second.told).toEqual([]);
+    first.child.kill('SIGTERM');
+    expect(await first.exit).toBe(0);
   });
 
   it('with a setting that cannot be says which, and exits with 1', async () => {

@@ -31,7 +31,7 @@ const minute = 60_000;
 const iso = (ms: number) => new Date(ms).toISOString();
 const petra = { id: 'p1', name: 'Petra Aldwin' };
 const hella = { id: 'p2', name: 'Hella Brandt' };
-const alert = (more: Partial<AlertDto> & { passedAt?: string } = {}): AlertDto => ({
+const alert = (more: Partial<AlertDto> = {}): AlertDto => ({
   id: 'a1',
   kind: 'charge-done',
   level: 'amber',
@@ -54,7 +54,7 @@ const noticeOf = (id: string) => ({
 });
 
 /** The page keeps one for its life. */
-let context: { state: string } | null = null;
+const contexts = new Set<{ state: string }>();
 let played: number[];
 let shaken: number[][];
 let told: unknown[];
@@ -67,13 +67,13 @@ function browser() {
   played = [];
   shaken = [];
   told = [];
-  if (context) context.state = 'suspended';
+  for (const context of contexts) context.state = 'suspended';
   class Context {
     state = 'suspended';
     currentTime = 0;
     destination = {};
     constructor() {
-      context = this;
+      contexts.add(this);
     }
     resume = async () => void (this.state = 'running');
     createGain = () => ({

@@ -180,6 +180,8 @@ describe('clock and calendar in the workshop’s zone', () => {
     const timer = { p10: at(14, 24), p50: at(14, 24), p90: at(14, 24) };
     expect(readyWithBand(timer, zone, now)).toBe('ready 14:24 (to the minute)');
     expect(readyBounds({ ...timer, p90: at(14, 25) }, zone, now)).toBe('14:24–14:25');
+    // Farther off than an hour all is told to 5 min.
+    expect(readyBounds({ p10: at(17, 4), p50: at(17, 5), p90: at(17, 6) }, zone, now)).toBe(`to 5${N}min`);
   });
 
   it('names the day of a bound that falls on another day than the likely finish', () => {

@@ -10,8 +10,9 @@ import { useMeters } from '@/shared/client/meters';
 import { useModuleType } from '@/shared/client/module-types';
 import { useSpare } from '@/shared/client/spares';
 import type { ChargeDto } from '@/shared/contract/charge';
+import { restCheckSchemaFor } from '@/shared/contract/rest-check';
 import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
-import { checkSchema, type CheckValues } from '@/shared/ui/charge/check-form';
+import type { CheckValues } from '@/shared/ui/charge/check-form';
 import { CheckScreen } from '@/shared/ui/charge/check-screen';
 import { topUpPath } from '@/shared/ui/charge/top-up';
 import { clock } from '@/shared/ui/format/clock';
@@ -81,7 +82,7 @@ function Form({
   const window = { ...charge, groupsInSeries: charge.groups.length };
   const initial: CheckValues = { groupVolts: charge.groups.map(() => ''), celsius: '', meterId: charge.meterId };
   const f = useContractForm({
-    schema: checkSchema(window, charge.toleranceVolts),
+    schema: restCheckSchemaFor(window, charge.toleranceVolts),
     initial,
     draft: `check.${charge.id}`,
     send: async (output) => {

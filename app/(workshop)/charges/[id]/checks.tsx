@@ -6,6 +6,7 @@ import { actProblem } from '@/shared/client/charge-acts';
 import { useAnswerCheck, useCharge, useStartCharge } from '@/shared/client/charges';
 import { useNow } from '@/shared/client/clock';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
+import { useLastMeter } from '@/shared/client/last-meter';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useModuleType } from '@/shared/client/module-types';
@@ -164,10 +165,12 @@ function Sheet({
 function ReadAgain({ charge, onRead, onClose }: { charge: ChargeDto; onRead: () => void; onClose: () => void }) {
   const meters = useMeters().data ?? [];
   const add = useAddSpareReading();
+  const meter = useLastMeter();
   const initial: CheckValues = {
     groupVolts: charge.groups.map(() => ''),
     celsius: '',
-    meterId: charge.meterId,
+    // The pack's own is best; else the one this person reads with.
+    meterId: charge.meterId ?? (meter.firstOf(meters) || null),
   };
   const f = useContractForm({
     schema: spareReadingSchemaFor({ ...charge, groupsInSeries: charge.groups.length }),
@@ -175,6 +178,7 @@ function ReadAgain({ charge, onRead, onClose }: { charge: ChargeDto; onRead: () 
     draft: `read-again.${charge.id}`,
     send: async (output) => {
       await add.mutateAsync({ id: charge.spare.id, ...output });
+      meter.keep(output.meterId);
       onRead();
       onClose();
     },

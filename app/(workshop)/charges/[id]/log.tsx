@@ -117,6 +117,7 @@ function Sheet({
   const f = useContractForm({
     schema: logSchema({
       window: { ...charge, groupsInSeries: count },
+      direction: charge.option.steps[charge.stepIndex]?.direction ?? charge.direction,
       zone,
       now: serverNow,
       ...(correcting ? { atOf: correctedInstant(correcting, zone) } : {}),

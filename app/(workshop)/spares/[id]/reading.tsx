@@ -5,6 +5,7 @@ import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { serverNow, useNow } from '@/shared/client/clock';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
+import { useLastMeter } from '@/shared/client/last-meter';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useAddSpareReading, useSpare } from '@/shared/client/spares';
@@ -58,10 +59,11 @@ function Form({ spare, meters, onBack }: { spare: SpareDto; meters: readonly Met
   const now = useNow(60_000);
   const today = dayOf(now, zone);
   const add = useAddSpareReading();
+  const meter = useLastMeter();
   const offline = useLink().state === 'down';
   const schema = useMemo(() => readingForm(spare, { zone, now: serverNow }), [spare, zone]);
   const initial = useMemo<DatedReadingTyped>(
-    () => ({ ...emptyReading(spare.groupsInSeries, spare.reading?.meterId ?? null), day: today, time: '' }),
+    () => ({ ...emptyReading(spare.groupsInSeries, meter.firstOf(meters)), day: today, time: '' }),
     // What stands there at first; a reading that arrives meanwhile must not empty the form.
     // eslint-disable-next-line react-hooks/exhaustive-deps
     [spare.id],
@@ -72,6 +74,7 @@ function Form({ spare, meters, onBack }: { spare: SpareDto; meters: readonly Met
     draft: `spare.reading.${spare.id}`,
     send: async (output) => {
       await add.mutateAsync({ id: spare.id, ...readingInput(output, zone) });
+      meter.keep(output.meterId);
       onBack();
     },
   });

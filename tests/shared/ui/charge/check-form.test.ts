@@ -1,11 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { checkSchema, decimalsProblem, judgeTyped } from '@/shared/ui/charge/check-form';
+import { decimalsProblem, restCheckSchemaFor } from '@/shared/contract/rest-check';
+import { judgeTyped } from '@/shared/ui/charge/check-form';
 import { needsWords, outsideWords } from '@/shared/ui/charge/check-words';
 import { pointMarks } from '@/shared/ui/format/marks';
 
 const window = { groupsInSeries: 2, chargeLimitVolts: 4.2, dischargeLimitVolts: 3 };
 const read = (groupVolts: string[], celsius = '21', toleranceVolts = 0.005) => {
-  const result = checkSchema(window, toleranceVolts).safeParse({ groupVolts, celsius, meterId: null });
+  const result = restCheckSchemaFor(window, toleranceVolts).safeParse({ groupVolts, celsius, meterId: null });
   return result.success
     ? { data: result.data }
     : { errors: Object.fromEntries(result.error.issues.map(({ path, message }) => [path.join('.'), message])) };
@@ -39,6 +40,17 @@ describe('the check as it is typed', () => {
     ['', 'The voltage is missing. Type it in V.'],
   ])('says what to change about %j', (text, sentence) => {
     expect(read([text, '3.957']).errors).toEqual({ 'groupVolts.0': sentence });
+  });
+
+  it('takes a number for what it says, and wants every group', () => {
+    expect(
+      restCheckSchemaFor(window, 0.005).parse({ groupVolts: [3.96, 3.957], celsius: null, meterId: null }),
+    ).toEqual({
+      groupVolts: [3.96, 3.957],
+      celsius: null,
+      meterId: null,
+    });
+    expect(read(['3.966']).errors).toEqual({ groupVolts: 'This type has 2 groups; 1 voltage was typed.' });
   });
 
   it('reads both decimal marks and a temperature', () => {

@@ -11,7 +11,7 @@ import { latestInstant } from '@/shared/ui/charge/said-at';
 import { at, charge, now, reading, zone } from './charges';
 
 const window = { ...charge('charging'), groupsInSeries: 3 };
-const schema = logSchema({ window, zone, now: () => now });
+const schema = logSchema({ window, direction: 'charge', zone, now: () => now });
 const read = (more: Partial<LogValues>) => {
   const result = schema.safeParse({ ...emptyLog(3), ...more });
   return result.success
@@ -29,6 +29,14 @@ describe('a reading as it is typed', () => {
       meterId: null,
       reason: null,
     });
+  });
+
+  it('asks about −5 A where it charges, and takes them where it discharges', () => {
+    expect(read({ amps: '-5 A' }).errors).toEqual({
+      amps: '−5.0\u00a0A would be a discharge; this one charges. 5.0\u00a0A?',
+    });
+    const out = logSchema({ window, direction: 'discharge', zone, now: () => now });
+    expect(out.parse({ ...emptyLog(3), amps: '-5 A' })).toMatchObject({ amps: -5 });
   });
 
   it('asks for at least one number, without blaming a field', () => {

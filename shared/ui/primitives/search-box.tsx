@@ -1,16 +1,39 @@
 import { useState } from 'react';
 import { TextInput, View } from 'react-native';
 import { Icon } from '../icons/icon';
-import { IconButton } from '../primitives/icon-button';
+
 import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { faceStacks, radius, stroke, touch, typeScale } from '../theme/tokens';
-import { web } from '../theme/web-props';
+import { web, type WebKeyEvent } from '../theme/web-props';
+import { IconButton } from './icon-button';
 
-/** One line to look in the stock, named by its placeholder. */
-export function SearchBox({ value, onChange }: { value: string; onChange: (value: string) => void }) {
+/** One line to look in a list, named by its placeholder: what it looks at. */
+export function SearchBox({
+  label,
+  value,
+  onChange,
+  onSubmit,
+  onKeyDown,
+  autoFocus,
+}: {
+  /** 'Label, type or shelf' */
+  label: string;
+  value: string;
+  onChange: (value: string) => void;
+  /** Enter: takes what was found, where that can be. */
+  onSubmit?: () => void;
+  onKeyDown?: (event: WebKeyEvent) => void;
+  autoFocus?: boolean;
+}) {
   const styles = useStyles();
   const [focused, setFocused] = useState(false);
+  const keyed = (event: WebKeyEvent) => {
+    if (event.key !== 'Enter') return onKeyDown?.(event);
+    // The renderer would take the focus away.
+    event.preventDefault();
+    onSubmit?.();
+  };
   return (
     <View {...web({ role: 'search' })} style={[styles.box, focused && styles.focused]}>
       <Icon name="search" size={22} tone="ink2" />
@@ -19,9 +42,11 @@ export function SearchBox({ value, onChange }: { value: string; onChange: (value
         onChangeText={onChange}
         onFocus={() => setFocused(true)}
         onBlur={() => setFocused(false)}
-        placeholder="Label, type or shelf"
+        placeholder={label}
         placeholderTextColor={styles.placeholder.color}
-        aria-label="Label, type or shelf"
+        aria-label={label}
+        autoFocus={autoFocus}
+        onKeyPress={(event) => keyed(event as unknown as WebKeyEvent)}
         inputMode="search"
         autoCorrect={false}
         autoCapitalize="none"
