@@ -18,13 +18,15 @@ const readingWords = (reading: ReadingDto, marks: Parameters<typeof clipVolts>[1
     .filter(Boolean)
     .join(' · ');
 
-/** Where it was read and with what: 'with Hand meter 1', 'off the charger’s display'. */
+/** With what it was read and where the clips were: 'with Hand meter 1 at the module', 'off the charger’s display'. */
 export function takenWords(
-  reading: Pick<ReadingDto, 'meterId'>,
+  reading: Pick<ReadingDto, 'meterId' | 'takenAt'>,
   meters: readonly { id: string; name: string }[],
 ): string {
-  if (reading.meterId === null) return 'off the charger’s display';
-  return `with ${meters.find((meter) => meter.id === reading.meterId)?.name ?? 'a meter that is gone'}`;
+  const { meterId, takenAt } = reading;
+  const place = takenAt === null ? '' : ` at the ${takenAt}`;
+  if (meterId === null) return `off the charger’s display${takenAt === null ? '' : `, sensed${place}`}`;
+  return `with ${meters.find((meter) => meter.id === meterId)?.name ?? 'a meter that is gone'}${place}`;
 }
 
 /** All readings, latest first. A corrected one stays, struck through, with who changed it and why. */

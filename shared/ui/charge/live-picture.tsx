@@ -10,6 +10,7 @@ import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';
 import { clockTicks } from '../wait-ribbon/ticks';
 import { cardRibbon } from './card-drawings';
+import { isOddReading } from './odd-seen-words';
 import { movedMs, type CardClock } from './card-model';
 
 /**
@@ -37,7 +38,7 @@ export function LivePicture({ charge, at }: { charge: ChargeDto; at: CardClock }
       s: (Date.parse(reading.at) - zero) / 1000,
       volts: reading.terminalVolts === null || charge.way !== 'terminals' ? null : reading.terminalVolts / count,
       amps: reading.amps === null ? null : Math.abs(reading.amps),
-      odd: false,
+      odd: isOddReading(reading, charge.odd),
     }));
   return (
     <View onLayout={({ nativeEvent }) => setWidth(Math.round(nativeEvent.layout.width))}>

@@ -16,8 +16,10 @@ import { HandCallOut } from './hand-call-out';
 import { liveNoteId } from './live-acts';
 import { LiveFacts } from './live-facts';
 import { LiveHead, StageLine } from './live-head';
+import { LearnedPanel } from './learned-panel';
 import { ClipOnLine, CurrentLine, LookInLine } from './live-lines';
 import { isProven, type LiveScreenProps } from './live-props';
+import { OddSeenCallOut } from './odd-seen-call-out';
 import { ReadyFacts } from './ready-panel';
 import { RestLine } from './rest-line';
 import { SeenAndPlan } from './seen-and-plan';
@@ -49,6 +51,7 @@ export function LiveWork(props: LiveScreenProps) {
       <CardRibbon card={charge} at={at} height={proven ? 56 : 76} stale={knownAt !== null} />
       <Drift {...props} />
       <WhileOffline {...props} />
+      {charge.odd ? <OddSeenCallOut odd={charge.odd} charge={charge} now={at.now} /> : null}
       <Asks {...props} />
       <Outcome {...props} />
       {isOver(charge) ? null : <Emergency charge={charge} chemistry={props.type?.chemistry ?? null} />}
@@ -59,6 +62,7 @@ export function LiveWork(props: LiveScreenProps) {
         </>
       )}
       {isUnderWay(charge) ? <SeenAndPlan charge={charge} now={at.now} /> : null}
+      <LearnedPanel learned={charge.learned} />
       {wide ? (
         <View style={styles.log}>
           <LiveReadings {...props} />

@@ -149,8 +149,57 @@ describe('a running charge', () => {
     expect(await screen.findByText('11.92 V · 10.0 A · 24 °C')).toBeTruthy();
     expect(screen.getByText(/Ines, off the charger’s display, corrected since$/)).toBeTruthy();
     expect(screen.getByText('11.29 V · 10.0 A · 24 °C')).toBeTruthy();
-    expect(await screen.findByText(/Ines, with Hand meter 1, a correction: Two digits the wrong way round$/)).toBeTruthy();
+    expect(
+      await screen.findByText(/Ines, with Hand meter 1, a correction: Two digits the wrong way round$/),
+    ).toBeTruthy();
     expect(screen.getAllByRole('button', { name: /^Correct the reading/ })).toHaveLength(1);
+  });
+});
+
+describe('what the readings say', () => {
+  it('an odd one stands with what was seen, what was expected and what to check first', async () => {
+    serverWith(
+      charge('charging', {
+        ...mine,
+        readings: [reading('13:06'), reading('13:36', { amps: 3.1 })],
+        odd: {
+          kind: 'stuck-current',
+          quantity: 'amps',
+          group: null,
+          seen: 3.1,
+          expected: 0.4,
+          readings: 2,
+          since: iso('13:30'),
+        },
+      }),
+    );
+    draw(<Live />);
+    const box = within(await screen.findByRole('region', { name: 'Odd reading' }));
+    expect(box.getByText(/^Current has stood at 3\.1\sA\. 0\.4\sA was expected\.$/)).toBeTruthy();
+    expect(box.getByText(/warmth at the groups, then what A2 is set to/)).toBeTruthy();
+    expect(box.getByText(/2 readings in a row since .*13:30; nothing is learned from them/)).toBeTruthy();
+  });
+
+  it('what they taught stands beside what was known; a charge that has taught nothing shows no table', async () => {
+    const learned = {
+      capacityAh: { mean: 60, sd: 0.78, priorMean: 62, priorSd: 3.9 },
+      longOhm: null,
+      leadOhm: null,
+    };
+    serverWith(charge('charging', { ...mine, learned }));
+    const { unmount } = draw(<Live />);
+    const table = within(await screen.findByRole('table', { name: 'Learned from this charge' }));
+    expect(table.getAllByRole('cell').map((cell) => cell.textContent)).toEqual([
+      'Capacity of a group, Ah',
+      '60.0 (59.0–61.0)',
+      '62.0 (57.0–67.0)',
+    ]);
+    unmount();
+    emptyDevice();
+    serverWith(charge('charging', mine));
+    draw(<Live />);
+    await screen.findByText('No reading yet. The times are the plan’s until the first one.');
+    expect(screen.queryByText('Learned from this charge')).toBeNull();
   });
 });
 
