@@ -246,18 +246,20 @@ function MeterAndTime({ form, meters, now, correcting }: LogSheetProps) {
 
 /** A meter may have been held at the supply or at the module: the leads lie in between. */
 function TakenAt({ form }: Pick<LogSheetProps, 'form'>) {
-  const { field } = useController({ control: form.control, name: 'takenAt' });
+  const {
+    field: { ref, value, onChange },
+  } = useController({ control: form.control, name: 'takenAt' });
   return (
     <Select
       label="Clips read at"
-      value={field.value === '' || field.value === undefined ? notSaid : field.value}
+      value={value || notSaid}
       options={[
         { value: notSaid, label: 'not said' },
         { value: 'module', label: 'the module' },
         { value: 'supply', label: 'the supply' },
       ]}
-      onChange={(chosen) => field.onChange(chosen === notSaid ? '' : chosen)}
-      ref={field.ref}
+      onChange={(chosen) => onChange(chosen === notSaid ? '' : chosen)}
+      ref={ref}
     />
   );
 }
