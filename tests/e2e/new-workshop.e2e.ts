@@ -60,7 +60,7 @@ describeInBrowser('an empty installation', () => {
     await password.fill(manager.password);
     await button(page, 'Create the workshop').click();
     await page.waitForURL('**/bench');
-    await words(page, 'No charges. Plan the first from a spare on the shelf.').waitFor();
+    await words(page, 'No charges. Plan one from a spare on the shelf.').waitFor();
     await judge(first, 'new-bench');
   });
 
