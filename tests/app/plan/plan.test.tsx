@@ -4,11 +4,11 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Plan from '@/app/(workshop)/plan';
 import { planCharge } from '@/calc';
 import type { PlanDto } from '@/shared/contract/plan';
-import type { SpareDto } from '@/shared/contract/spare';
 import { channel, planInput } from '../../calc/plan-fixtures';
 import { pressFrom } from '../../support/press';
 import { draw, emptyDevice, input, meters, press, problem } from '../charges/bench-of';
 import { fakeServer } from '../workshop/server';
+import { spareOf } from './spare-of';
 
 const address = vi.hoisted(() => ({ params: { spare: 's1' } as Record<string, string> }));
 vi.mock('expo-router', async (original) => ({
@@ -16,31 +16,7 @@ vi.mock('expo-router', async (original) => ({
   useLocalSearchParams: () => address.params,
 }));
 
-const spare = {
-  id: 's1',
-  label: 'S-0398',
-  moduleTypeId: 't1',
-  typeName: '2-series 66 Ah',
-  shelfPlace: 'B2',
-  groupsInSeries: 2,
-  chargeLimitVolts: 4.2,
-  dischargeLimitVolts: 2.7,
-  floorVolts: 2.5,
-  shelfVolts: null,
-  where: 'shelf',
-  condition: 'sound',
-  capacitySource: 'measured',
-  capacityAh: 66,
-  healthPercent: null,
-  usedCapacityAh: 66,
-  capacitySdAh: 2,
-  capacities: [],
-  quarantine: null,
-  charge: null,
-  reading: null,
-  note: null,
-  rev: 1,
-} satisfies SpareDto;
+const spare = spareOf();
 
 const planned: PlanDto = {
   plan: planCharge(planInput({ channels: [channel('A1')] })),

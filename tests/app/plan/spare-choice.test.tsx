@@ -4,32 +4,15 @@ import { describe, expect, it, vi } from 'vitest';
 import type { SpareDto } from '@/shared/contract/spare';
 import { FormatsProvider } from '@/shared/ui/format/formats';
 import { SpareChoice } from '@/shared/ui/plan/spare-choice';
+import { spareOf } from './spare-of';
 
-const spare = (number: number, more: Partial<SpareDto> = {}): SpareDto => ({
-  id: `s${number}`,
-  label: `S-04${String(number).padStart(2, '0')}`,
-  moduleTypeId: 't1',
-  typeName: '2-series 66 Ah',
-  shelfPlace: `D${number}`,
-  groupsInSeries: 2,
-  chargeLimitVolts: 4.2,
-  dischargeLimitVolts: 2.7,
-  floorVolts: 2.5,
-  shelfVolts: null,
-  where: 'shelf',
-  condition: 'sound',
-  capacitySource: 'measured',
-  capacityAh: 66,
-  healthPercent: null,
-  usedCapacityAh: 66,
-  capacitySdAh: 2,
-  quarantine: null,
-  charge: null,
-  reading: null,
-  note: null,
-  rev: 1,
-  ...more,
-});
+const spare = (number: number, more: Partial<SpareDto> = {}): SpareDto =>
+  spareOf({
+    id: `s${number}`,
+    label: `S-04${String(number).padStart(2, '0')}`,
+    shelfPlace: `D${number}`,
+    ...more,
+  });
 const eight = Array.from({ length: 8 }, (_, index) => spare(index + 1));
 const nine = [...eight, spare(9, { typeName: '3-series 78 Ah', shelfPlace: 'rack 2' })];
 
