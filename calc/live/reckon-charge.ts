@@ -50,8 +50,9 @@ export function reckonCharge(input: ReckonInput): Reckoning {
 
   const fixed = fixedClock(model, input, replay, past, ahead, over);
   const seconds = model.samples.map((sample) => finishOf(fixed, ahead, (lane) => lane.secondsIn(sample)));
-  const readyS = bandOf(seconds, model.weights);
-  const clock = likelyClock(fixed, ahead, readyS.p50);
+  const byS = bandOf(seconds, model.weights);
+  const clock = likelyClock(fixed, ahead, byS.p50);
+  const readyS = shifted(byS, clock.readyS - byS.p50);
   if (fixed.settledAtS !== null) shorten(clock, fixed);
 
   const currentEndS = clock.currentEndS;
@@ -126,6 +127,8 @@ function bandOf(seconds: readonly number[], weights: Float64Array | null): Band 
   return { p10: p10!, p50: p50!, p90: p90! };
 }
 
+const shifted = ({ p10, p50, p90 }: Band, byS: number): Band => ({ p10: p10 + byS, p50: p50 + byS, p90: p90 + byS });
+
 interface FixedClock {
   nowS: number;
   /** Last current where it is over; else null. */
@@ -191,6 +194,15 @@ function finishOf(fixed: FixedClock, ahead: Ahead, secondsOf: SecondsOf): number
 const restEnd = (fixed: FixedClock, currentEndS: number): number =>
   fixed.settledAtS === null ? currentEndS + fixed.restS : Math.min(currentEndS + fixed.restS, fixed.settledAtS);
 
+/**
+ * The middle of the samples and the nominal run may end minutes apart, and the nominal one says when the current is over. What
+ * is left of it is therefore not stretched or pressed further than this: the likely end slides over to the nominal one as that
+ * comes near, in place of standing at 'now' until it is there.
+ */
+const LEAST_STRETCH = 0.5;
+
+const clamp = (value: number, least: number, most: number): number => Math.min(most, Math.max(least, value));
+
 /** The likely course: what is to come by the nominal run, stretched so that it is ready at the middle of the band. */
 function likelyClock(fixed: FixedClock, ahead: Ahead, p50: number): AheadClock {
   if (fixed.currentEndS !== null) {
@@ -199,7 +211,7 @@ function likelyClock(fixed: FixedClock, ahead: Ahead, p50: number): AheadClock {
   }
   const nominal = finishOf(fixed, ahead, (lane) => lane.seconds);
   const flowing = ahead.rounds.reduce((sum, round) => sum + Math.max(...round.lanes.map((lane) => lane.seconds)), 0);
-  const stretch = flowing > 0 ? Math.max(0, 1 + (p50 - nominal) / flowing) : 1;
+  const stretch = flowing > 0 ? clamp(1 + (p50 - nominal) / flowing, LEAST_STRETCH, 1 / LEAST_STRETCH) : 1;
   let at = fixed.nowS;
   const rounds = ahead.rounds.map((round) => {
     const last = round.lanes.reduce((longest, lane) => (lane.seconds > longest.seconds ? lane : longest));

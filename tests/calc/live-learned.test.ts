@@ -50,6 +50,19 @@ describe('what a running charge learns', () => {
     expect(Math.abs(readyS.p50 - truth)).toBeLessThan(0.5 * (needed(66) - needed(56)));
   });
 
+  it.each([56, 61, 71, 76])('comes to its own end in at most 40 looks, however far %d Ah move the band', (trueAh) => {
+    const readings = readingsOf(trueAh, 0.002, 600, 5400);
+    // Looked at again whenever the reckoned end has come, a millisecond after it: as the server does.
+    let nowS = 5400;
+    for (let looks = 0; looks <= 40; looks += 1) {
+      const now = reckon(input, readings, nowS);
+      if (now.stage === 'resting') return;
+      expect(now.readyS.p50).toBeCloseTo(now.restEndS + 300, 6);
+      nowS = now.currentEndS + 1e-3;
+    }
+    expect.unreachable(`still charging at ${nowS} s`);
+  });
+
   it('learns a resistance of 4 mohm where 2 were guessed within a factor of two', () => {
     const plan = planInput({
       ...input,
