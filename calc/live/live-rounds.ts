@@ -1,6 +1,7 @@
 import type { ReckonInput, RunStretch } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import { lanePast, laneReadings, type LanePast, type LaneReading, type Stretch } from './live-past';
+import { laneReadings, type LanePast, type LaneReading, type Stretch } from './lane-past';
+import { lanePast } from './live-past';
 import { laneOf, liveRounds } from './live-model';
 import type { Lane } from './lane';
 import { rested, stateAtStart, type ModuleState } from './module-state';

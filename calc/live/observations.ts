@@ -1,7 +1,7 @@
 import { voltsAtSoc } from '../curve/ocv';
 import type { ChannelParameters } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
-import type { Knot } from './live-past';
+import type { Knot } from './lane-past';
 import { movedAfter, type LivePast, type LiveRound } from './live-rounds';
 import type { Lane } from './lane';
 import { rested } from './module-state';

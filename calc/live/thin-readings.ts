@@ -1,5 +1,5 @@
 import type { LiveReading } from '../live-types';
-import type { LaneReading } from './live-past';
+import type { LaneReading } from './lane-past';
 
 /** A reading that counts, and what it stands for. */
 export interface KeptReading extends LaneReading {
