@@ -4,8 +4,8 @@ import type { ChannelParameters, Way } from '../plan-types';
 import { setVoltageCap } from '../set-voltage-cap';
 import type { DraftStep, NotPossible } from './draft';
 import type { PlanModel } from './plan-model';
-import { channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
-import { leadOhmOf } from './leads';
+import { ampsWidening, channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
+import { leadOhmIn, leadOhmOf } from './leads';
 import { chargerSd, sampleRun } from './sample-run';
 import { groupsAt, sampleString } from './series-step';
 import { limitText } from './words';
@@ -106,8 +106,11 @@ export function endStep(
 
   const socAfter = [...soc];
   groupIndexes.forEach((group, at) => (socAfter[group] = reached[at]!));
+  const leads = leadOhmIn(channel);
   const run = sampleRun({
     model,
+    ...(leads === undefined ? {} : { leadOhmIn: leads }),
+    currentWidening: ampsWidening(channel, source.maxAmps, model.spreads.currentRelative),
     source,
     sign,
     count,

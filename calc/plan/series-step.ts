@@ -138,7 +138,7 @@ function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: S
   const { channel, aimVolts } = input;
   const ohm = source.leadResistanceOhm + input.linkOhm + input.stringIn(model.nominal).ohm;
   const markVolts = Math.max(input.markVolts, channel.minAmps * ohm);
-  const leads = leadOhmIn(model, channel);
+  const leads = leadOhmIn(channel);
   const run = sampleRun({
     model,
     ...(leads === undefined ? {} : { leadOhmIn: leads }),
