@@ -1,4 +1,5 @@
 import type { Sample } from '../plan/samples';
+import { socOf } from '../plan/soc-of';
 import { AS_SET, type Drive } from './lane';
 import { liveSampleRun, type MovedIn } from './live-samples';
 import type { LiveModel } from './live-model';
@@ -26,7 +27,7 @@ export interface RoundAhead {
 
 export interface Ahead {
   rounds: RoundAhead[];
-  /** At the nominal end of all currents, as far as the model runs it: of the round that runs now. */
+  /** At the nominal end of all currents: charge by the plan where a later round is to come, over-voltage of the one that runs. */
   endState: ModuleState;
   /** Charge still to come, as the option counts it, Ah. */
   ampHours: number;
@@ -69,6 +70,12 @@ export function liveAhead(model: LiveModel, input: ReplayInput, past: LivePast):
     const first = option.steps[steps[0]!]!;
     const handsS = before ? first.startS - Math.max(...before.map((at) => option.steps[at]!.stopS)) : 0;
     ahead.rounds.push({ handsS, lanes });
+    // Where a later round leaves its groups is the plan's: the rest goes by the last of them.
+    const soc = [...ahead.endState.soc];
+    for (const at of steps)
+      for (const group of option.steps[at]!.groupIndexes)
+        soc[group] = socOf(model.curve, option.steps[at]!.restVoltsAfter[group]!);
+    ahead.endState = { ...ahead.endState, soc };
   });
   return ahead;
 }

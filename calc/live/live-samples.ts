@@ -70,6 +70,7 @@ export function liveSampleRun(
     aimVolts: endVolts,
     first:
       step.way === 'terminals' &&
+      step.precharge !== true &&
       step.restVoltsAfter.some((volts) => Math.abs(volts - model.targetVolts) > model.toleranceVolts + 1e-5),
     endAmps: onTheMark && step.setVolts !== null ? Math.max((sign * (step.setVolts - endVolts)) / ohm, 1e-4) : null,
     stringIn,

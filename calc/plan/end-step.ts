@@ -7,7 +7,7 @@ import type { PlanModel } from './plan-model';
 import { ampsWidening, channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
 import { leadOhmIn, leadOhmOf } from './leads';
 import { chargerSd, sampleRun } from './sample-run';
-import { groupsAt, sampleString } from './series-step';
+import { groupsAt, prechargeAmps, sampleString } from './series-step';
 import { limitText } from './words';
 
 /** Current at which a taper counts as full or empty, as a multiple of the capacity per hour: C/20, common practice. */
@@ -44,6 +44,7 @@ export function endStep(
         Math.min(
           channelAmps(channel, channel.maxAmps, model.input.celsius),
           module.maxChargeAmps * moduleCurrentShare(module, model.celsius),
+          prechargeAmps(model, direction, groups) ?? Infinity,
         ),
       )
     : snappedAmps(channel, Math.min(channel.dischargeAmps ?? channel.maxAmps, module.maxDischargeAmps));

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { planCharge, reckonCharge } from '@/calc/index';
 import type { ChannelParameters, PlanInput, PlanOption, TimeFactor } from '@/calc/plan-types';
 import { plannedRuns, reckonInput } from './live-fixtures';
-import { planInput, sixChannels, lmoModule, lmoSpare } from './plan-fixtures';
+import { channel, planInput, sixChannels, lmoModule, lmoSpare, target } from './plan-fixtures';
 
 const even = planInput({ channels: sixChannels });
 const uneven = planInput({
@@ -39,6 +39,15 @@ const cases: [string, PlanInput][] = [
       spare: { ...lmoSpare, groupVolts: [3.7, 3.72] },
     }),
   ]),
+  ['60 W at 7.5 V', planInput({ channels: [channel('A1', { maxWatts: 60 })] })],
+  [
+    'pre-charge of a low group',
+    planInput({
+      module: { ...lmoModule, chemistry: 'nmc', prechargeBelowVolts: 3, dischargeLimitVolts: 2.8 },
+      spare: { ...lmoSpare, groupVolts: [2.85, 2.95] },
+      target: { ...target, volts: 3.7 },
+    }),
+  ],
 ];
 
 /** The planned times with each step as long as closed charges have made it. */
