@@ -12,6 +12,7 @@ import { oddGroup } from './odd-group';
 import { offOfVolts, oddVolts } from './odd-volts';
 import { OddRuns, type OddLook } from './odd-run';
 import { ParticleSet } from './particle-set';
+import { rippleOf } from './ripple';
 import type { KeptReading } from './thin-readings';
 
 /** What the readings of a charge have made of its samples. */
@@ -43,14 +44,15 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
   };
   if (kept.length === 0 || model.samples.length === 1) return followed;
   const set = new ParticleSet(model, Math.max(PARTICLES, model.samples.length), seed);
-  const looks = new Looks(model);
+  const observations = observationsOf(model, past, kept);
+  const looks = new Looks(model, rippleOf(observations));
   const learns = new Learns(model, past, set);
   const runs = new OddRuns();
   let underCurrent: Reckoning['learned'] | null = null;
   let voltsSoc: number | null = null;
   let celsiusS: number | null = null;
   let warmFrom: WarmFrom | null = null;
-  for (const at of observationsOf(model, past, kept)) {
+  for (const at of observations) {
     const { circuit, kept: reading } = at;
     if (at.atRest) underCurrent ??= learns.now();
     const soc = movedSoc(model, at);

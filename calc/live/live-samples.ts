@@ -52,8 +52,10 @@ export function liveSampleRun(
   const asPlanned = leadOhmIn(channel);
   // The current that ends a taper is the plan's, whatever has been learned since.
   const ohm = source.leadResistanceOhm + linkOhm + stringIn(model.planned).ohm;
+  const knownEnd = option.knownEnd === undefined ? null : option.knownEnd === 'full' ? 'charge' : 'discharge';
+  const toEnd = knownEnd === step.direction;
   const onTheMark = isOnTheMark(model, option, step, count, endVolts);
-  return sampleRun({
+  const run = sampleRun({
     model,
     source: { ...source, setVolts, maxAmps: asSetAmps(meanSetAmps(step, channel), drive) ?? source.maxAmps },
     sign,
@@ -67,14 +69,23 @@ export function liveSampleRun(
     },
     currentWidening: unread ? ampsWidening(channel, source.maxAmps, model.spreads.currentRelative) : 1,
     startAmps: drive.seenInTaper && ampsNow > 0 ? ampsNow : null,
-    aimVolts: endVolts,
+    aimVolts: toEnd && setVolts !== null ? setVolts : endVolts,
     first:
       step.way === 'terminals' &&
       step.precharge !== true &&
+      knownEnd === null &&
       step.restVoltsAfter.some((volts) => Math.abs(volts - model.targetVolts) > model.toleranceVolts + 1e-5),
-    endAmps: onTheMark && step.setVolts !== null ? Math.max((sign * (step.setVolts - endVolts)) / ohm, 1e-4) : null,
+    endAmps: toEnd
+      ? Math.abs(step.endAmps)
+      : onTheMark && step.setVolts !== null
+        ? Math.max((sign * (step.setVolts - endVolts)) / ohm, 1e-4)
+        : null,
     stringIn,
   });
+  if (knownEnd === null || toEnd) return run;
+  // From a known end people stop by the count, so that its time is certain.
+  const { seconds, ampHours } = run(model.nominal);
+  return (sample) => ({ seconds, ampHours: ampHours * sample.currentFactor });
 }
 
 /** The set current where what was read is that one: how far it is off is in the samples; else as read. */

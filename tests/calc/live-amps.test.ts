@@ -1,14 +1,19 @@
 import { describe, expect, it } from 'vitest';
-import { planCharge, reckonCharge } from '@/calc/index';
+import { planCharge, reckonCharge, type ChannelParameters } from '@/calc/index';
 import type { LiveReading } from '@/calc/live-types';
 import { reckonInput } from './live-fixtures';
 import { channel, planInput } from './plan-fixtures';
 import { Chance } from './reference/worlds';
 
 /** What a display or a logger makes of the charger's current; the volts are the nominal module's at it. */
-function watched(maxAmps: number, everyS: number, untilS: number, shown: (at: number) => number, stepAmps?: number) {
-  const over = { maxAmps, ...(stepAmps === undefined ? {} : { displayStepAmps: stepAmps }) };
-  const input = planInput({ channels: [channel('A1', over)] });
+function watched(
+  maxAmps: number,
+  everyS: number,
+  untilS: number,
+  shown: (at: number) => number,
+  over: Partial<ChannelParameters> = {},
+) {
+  const input = planInput({ channels: [channel('A1', { maxAmps, ...over })] });
   const option = planCharge(input).options.find((one) => one.id === 'terminals/over-and-settle/id-A1')!;
   const readings = Array.from({ length: Math.floor(untilS / everyS) }, (_, at): LiveReading => {
     const s = (at + 1) * everyS;
@@ -37,7 +42,9 @@ describe('a display of 0.1 A steps', () => {
     'that flickers between 1.9 and 2.0 A, read every %d s, raises nothing and keeps its end to 3 %',
     (everyS) => {
       const chance = new Chance(6);
-      const { at, currentS } = watched(2, everyS, 18_000, () => (chance.uniform() < 0.5 ? 1.9 : 2), 0.1);
+      const { at, currentS } = watched(2, everyS, 18_000, () => (chance.uniform() < 0.5 ? 1.9 : 2), {
+        displayStepAmps: 0.1,
+      });
       for (const nowS of [1800, 9000, 18_000]) {
         const seen = at(nowS);
         expect(seen.odd).toBeNull();
@@ -45,4 +52,25 @@ describe('a display of 0.1 A steps', () => {
       }
     },
   );
+});
+
+describe('a charger that gives 70 % when it is warm', () => {
+  const derating = { aboveCelsius: 30, ampsShare: 0.7 };
+  // 10 A for 40 min and 7 A from then on.
+  const shown = (at: number): number => (at < 4 ? 10 : 7);
+
+  it('and does so after 40 min raises nothing, and ends with what is left at 7 A, to 2 %', () => {
+    const { at, currentS } = watched(10, 600, 5400, shown, { derating });
+    const nowS = 5400;
+    const seen = at(nowS);
+    expect(seen.odd).toBeNull();
+    // Half way from the last 10 A to the first 7 A by the trapezium, as all readings are taken.
+    const ampSeconds = 10 * 2400 + 8.5 * 600 + 7 * 2400;
+    expect(seen.deliveredAh).toBeCloseTo(ampSeconds / 3600, 6);
+    expect(Math.abs(seen.currentEndS / (nowS + (10 * currentS - ampSeconds) / 7) - 1)).toBeLessThan(0.02);
+  });
+
+  it('is a stuck current where nobody has said that it does so', () => {
+    expect(watched(10, 600, 5400, shown).at(5400).odd?.kind).toBe('stuck-current');
+  });
 });

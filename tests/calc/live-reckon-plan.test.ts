@@ -39,6 +39,15 @@ const cases: [string, PlanInput][] = [
       spare: { ...lmoSpare, groupVolts: [3.7, 3.72] },
     }),
   ]),
+  ...[{}, { duty: 0.8 }].map((over): [string, PlanInput] => [
+    `counted from a known end ${JSON.stringify(over)}`,
+    planInput({
+      module: { ...lmoModule, chemistry: 'lfp', ratedAh: 100, chargeLimitVolts: 3.6, dischargeLimitVolts: 2.5 },
+      spare: { ...lmoSpare, groupVolts: [3.3, 3.3], capacityAh: 100 },
+      target: { ...target, volts: 0, soc: 0.6 },
+      channels: [channel('A1', { maxAmps: 20, canDischarge: true, dischargeAmps: 25, ...over })],
+    }),
+  ]),
   ['60 W at 7.5 V', planInput({ channels: [channel('A1', { maxWatts: 60 })] })],
   [
     'pre-charge of a low group',
