@@ -14,8 +14,14 @@ export interface LaneReading {
   s: number;
   amps: number | null;
   terminalVolts: number | null;
-  /** Ampere-seconds since the reading before, where more were read between the two than are kept. */
+  /** Ampere-seconds since the reading before, where more were read between the two than are kept, or it may have paused. */
   ampSeconds?: number;
+  /** Readings it stands for, itself among them; left out: itself. */
+  count?: number;
+  /** The current at that instant, where `amps` is its mean over thermal pauses. */
+  readAmps?: number;
+  /** Read in a thermal pause. */
+  paused?: true;
 }
 
 /** A reading of the current. */
@@ -30,6 +36,8 @@ export interface Knot {
   amps: number;
   /** What the source would give as set, at that state; positive. */
   dueAmps: number;
+  /** In a thermal pause: no current, and no fault. */
+  paused: boolean;
   /** A voltage limit rules. */
   tapering: boolean;
   /** No current was read while some was due. */

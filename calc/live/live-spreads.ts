@@ -28,6 +28,8 @@ export const LIVE_SPREADS = {
   ammeterRelative: 0.003,
   /** and by this at each look, A. */
   ammeterAmps: 0.03,
+  /** A charger's current goes to and fro by this share of itself between two looks: ripple. */
+  rippleRelative: 0.01,
   /** Leads that nobody has measured, as a share of what is entered. */
   leadRelative: 0.5,
   /** Leads entered as nothing on a supply that senses its own terminals: half a normal distribution of this, ohm. */

@@ -30,9 +30,9 @@ export interface Since {
 /** A current this near to the full one is that one. */
 const FULL_SHARE = 0.97;
 
-/** The source gives what it is set to: no voltage limit rules. */
-export const isFull = ({ fullAmps }: Circuit, amps: number): boolean =>
-  fullAmps === null || amps >= FULL_SHARE * fullAmps;
+/** The source gives what it is set to, to a step of its display: no voltage limit rules. */
+export const isFull = ({ fullAmps, channel }: Circuit, amps: number): boolean =>
+  fullAmps === null || amps >= FULL_SHARE * fullAmps - (channel.displayStepAmps ?? 0);
 
 /** The mean rest voltage of the groups of a circuit in one sample, V, as its true voltmeter would have it. */
 function restVoltsIn(
@@ -181,12 +181,13 @@ export class Looks {
   amps({ kept, circuit }: Observation): Look | null {
     const set = circuit?.fullAmps ?? null;
     if (kept.amps === null || set === null) return null;
+    const digitAmps = (circuit!.channel.displayStepAmps ?? 0) / Math.sqrt(12);
     return {
       memory: 'amps',
       residual: (sample) => kept.amps! / set - sample.currentFactor,
       sharedSd: LIVE_SPREADS.ammeterRelative,
       kept: 1,
-      ownVariance: (LIVE_SPREADS.ammeterAmps / set) ** 2,
+      ownVariance: (LIVE_SPREADS.ammeterAmps / set) ** 2 + LIVE_SPREADS.rippleRelative ** 2 + (digitAmps / set) ** 2,
     };
   }
 

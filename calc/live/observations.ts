@@ -65,7 +65,7 @@ export function observationsOf(model: PlanModel, past: LivePast, kept: readonly 
         kept: reading,
         movedAh: movedAfter(model, round.movedBeforeAh, lane, knot.deliveredAh),
         over: knot.state.over,
-        circuit: channel && !knot.over ? circuitOf(model, lane, channel, knot) : null,
+        circuit: channel && !knot.over && !knot.paused ? circuitOf(model, lane, channel, knot) : null,
         atRest: knot.over,
         ownHeatKelvin: warmed({ s: reading.s, amps: knot.amps }),
       });

@@ -14,6 +14,7 @@ import { endOf, liveSegments } from './live-segments';
 import { finishOf, fixedClock, likelyClock, shorten, stateBack } from './live-clock';
 import { isOverrun, stageOf, taperOf } from './live-stage';
 import { followReadings } from './follow-readings';
+import { learnedTimes } from './learned-times';
 import { learnedModel } from './learned-model';
 import { liveDoubt } from './live-doubt';
 import { thinReadings } from './thin-readings';
@@ -48,7 +49,8 @@ export function reckonCharge(input: ReckonInput): Reckoning {
   const flowsOn = !over && ahead.rounds.length === 1 && isOverrun(current);
 
   const fixed = fixedClock(model, input, replay, past, ahead, over);
-  const seconds = model.samples.map((sample) => finishOf(fixed, ahead, (lane) => lane.secondsIn(sample)));
+  const secondsIn = learnedTimes(planned, model, replay, ahead);
+  const seconds = model.samples.map((sample, at) => finishOf(fixed, ahead, (lane) => secondsIn(lane, sample, at)));
   const byS = bandOf(seconds, model.weights);
   const clock = likelyClock(fixed, ahead, byS.p50);
   const readyS = shifted(byS, clock.readyS - byS.p50);

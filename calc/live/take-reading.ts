@@ -14,7 +14,7 @@ const CONSTANT_SHARE = 0.97;
  * run of the model.
  */
 export function glide(lane: Lane, past: LanePast, before: number | null, reading: AmpsReading): boolean {
-  const { setAmps } = lane.step;
+  const { setAmps } = lane;
   const { amps } = reading;
   if (before === null || setAmps === null || past.endedAtS !== null || past.overrun || past.noCurrent) return false;
   if (amps <= zeroBelow(lane) || amps <= lane.trickleAmps) return false;
@@ -87,7 +87,7 @@ export function takeReading(
 }
 
 function driveFrom(lane: Lane, past: LanePast, reading: AmpsReading): Drive {
-  const set = lane.step.setAmps;
+  const set = lane.setAmps;
   if (set === null) return lane.driveInTaper(past.state, reading.amps);
   const byModel = lane.ampsAt(past.state, AS_SET) < set * CONSTANT_SHARE;
   const byVolts = reading.terminalVolts !== null && lane.atSetVolts(reading.terminalVolts, reading.amps);
@@ -98,8 +98,8 @@ function driveFrom(lane: Lane, past: LanePast, reading: AmpsReading): Drive {
   return { maxAmps: reading.amps, setShiftVolts: 0, seenInTaper: false };
 }
 
-function zeroBelow({ step }: Lane): number {
-  const set = (step.setAmps ?? Math.abs(step.endAmps)) * ZERO_OF_SET;
+function zeroBelow({ step, setAmps }: Lane): number {
+  const set = (setAmps ?? Math.abs(step.endAmps)) * ZERO_OF_SET;
   return Math.max(0.005, Math.min(set, Math.abs(step.endAmps) * ZERO_OF_END));
 }
 

@@ -4,7 +4,7 @@ import type { Doubt, Spreads } from '../plan-types';
 import { socOf } from './soc-of';
 import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
 import { inverseNormal } from '../statistics/inverse-normal';
-import { latinHypercube } from '../statistics/latin-hypercube';
+import { latinHypercube, latinHypercubeNormal } from '../statistics/latin-hypercube';
 import { normalCdf } from '../statistics/normal-cdf';
 
 /** What one axis of the sample set stands for. */
@@ -22,8 +22,12 @@ const AXES = [
   'charger-meter',
   'curve',
   'temperature',
+  'leads',
 ] as const;
 type Axis = (typeof AXES)[number];
+
+/** The leads, last of the axes, have a draw of their own, so that they came in without moving the others. */
+const LEAD_SEED_STEP = 7919;
 
 /** The number a person would measure better to be rid of an axis. */
 export const DOUBT_OF_AXIS: Record<Axis, Doubt> = {
@@ -37,9 +41,10 @@ export const DOUBT_OF_AXIS: Record<Axis, Doubt> = {
   'target-meter': 'target-reading',
   'target-scatter': 'target-reading',
   'target-hysteresis': 'curve',
-  'charger-meter': 'target-reading',
+  'charger-meter': 'charger',
   curve: 'curve',
   temperature: 'temperature',
+  leads: 'leads',
 };
 
 /** The module as one sample sees it. */
@@ -91,7 +96,10 @@ export interface SampleBasis {
  */
 export function drawSamples(basis: SampleBasis, count: number, seed: number): Sample[] {
   if (count === 1) return [sampleOf(basis, new Array<number>(AXES.length).fill(0))];
-  return latinHypercube(count, AXES.length, seed).map((point) => sampleOf(basis, point.map(inverseNormal)));
+  const leads = latinHypercubeNormal(count, 1, seed + LEAD_SEED_STEP);
+  return latinHypercube(count, AXES.length - 1, seed).map((point, at) =>
+    sampleOf(basis, [...point.map(inverseNormal), ...leads[at]!]),
+  );
 }
 
 /** The axes in the order of `Sample.draws`. */
