@@ -1,4 +1,5 @@
 import { chargeThroughTerminals, planCharge, reckonCharge, type PlanInput } from '@/calc/index';
+import { DEFAULT_SAMPLES } from '@/calc/plan/plan-model';
 import { fileURLToPath } from 'node:url';
 import { reckonInput } from '../calc/live-fixtures';
 import { lmoModule, lmoSpare, planInput, sixChannels } from '../calc/plan-fixtures';
@@ -20,7 +21,7 @@ const plans: { name: string; input: PlanInput }[] = [
 ];
 
 /**
- * Times a whole plan, all ways, finishes and six channels with bands of 64 samples, against the same plan's nominal run alone
+ * Times a whole plan, all ways, finishes and six channels with their bands, against the same plan's nominal run alone
  * (one sample), and against one single step of the core through a taper; then one reckoning of a running charge.
  *
  * @returns lines to print
@@ -41,7 +42,7 @@ function benchOne({ name, input }: (typeof plans)[number], stepMs: number): stri
   const whole = fastest(() => planCharge(input), 3, 10);
   const nominal = fastest(() => planCharge({ ...input, samples: 1 }), 3, 10);
   return (
-    `a plan, ${name}, six channels: ${whole.toFixed(1)} ms for ${options.length} ways with bands of 64 samples; ` +
+    `a plan, ${name}, six channels: ${whole.toFixed(1)} ms for ${options.length} ways with bands of ${DEFAULT_SAMPLES} samples; ` +
     `${(whole / nominal).toFixed(2)} times its nominal run alone (${nominal.toFixed(1)} ms), ` +
     `${(whole / stepMs).toFixed(0)} times one on-the-mark step of the core (${(1000 * stepMs).toFixed(0)} µs); ` +
     ratioText(whole, yardsticks())

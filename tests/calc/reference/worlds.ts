@@ -68,8 +68,10 @@ export interface WorldSpreads {
 
 /** What the world is beside the spreads: where it is not the one that was planned for. */
 export interface Twist {
-  /** The whole curve, V a group. */
+  /** The whole curve is off by this, V a group, in place of what is drawn. */
   curveVolts?: number;
+  /** The resistance under current and the curve's shape are off as the model's own spreads have them. */
+  bent?: boolean;
   /** True lead resistance, ohm. */
   leadOhm?: number;
   /** A second, slow RC pair takes this share of the long resistance, with this time constant, s. */
@@ -104,7 +106,8 @@ export function drawWorld(
   const count = plan.spare.groupVolts.length;
   const normal = (): number => chance.normal();
 
-  const curveOff = spreads.curveVolts * normal() + (twist.curveVolts ?? 0);
+  const drawnOff = spreads.curveVolts * normal();
+  const curveOff = twist.curveVolts ?? drawnOff;
   const meter = spreads.meterVolts * normal();
   const other = spreads.meterVolts * normal();
   const sameMeter = plan.spare.meterId !== null && plan.spare.meterId === plan.target.meterId;
@@ -123,14 +126,14 @@ export function drawWorld(
       ? 0
       : (twist.leadOhm ?? channel.leadResistanceOhm * Math.exp(spreads.leadRelative * normal()));
   const ammeter = 1 + spreads.ammeterRelative * normal();
-  const modelFactor = Math.exp(spreads.modelRelative * normal());
+  const modelFactor = twist.bent ? Math.exp(spreads.modelRelative * normal()) : 1;
 
   // True rest volts are the table's less the offset; what a meter read is the true volts less its own offset.
   const startSoc = plan.spare.groupVolts.map((volts) =>
     socAtVolts(table, volts + spreads.readingVolts * normal() + meter + curveOff),
   );
   const targetSoc = socAtVolts(table, plan.target.volts + targetOff + targetMeter + curveOff);
-  const trueCurve = shiftCurve(bent(table, spreads, chance), -curveOff);
+  const trueCurve = shiftCurve(twist.bent ? bent(table, spreads, chance) : table, -curveOff);
   // Whoever reads the module at rest finds it on the table; bent is what the curve is under current.
   const endVolts = voltsAtSoc(trueCurve, targetSoc);
   const slowOhm = (twist.slow?.share ?? 0) * longOhm;
