@@ -56,8 +56,11 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     const { circuit, kept: reading } = at;
     if (at.atRest) underCurrent ??= learns.now();
     const soc = movedSoc(model, at);
+    const along = voltsSoc === null ? 0 : Math.abs(soc - voltsSoc) / LIVE_SPREADS.modelCorrelationSoc;
     const since: Since = {
-      keptVolts: voltsSoc === null ? 1 : Math.exp(-Math.abs(soc - voltsSoc) / LIVE_SPREADS.modelCorrelationSoc),
+      keptVolts: Math.exp(-along),
+      // A smooth error forgets itself over the same charge with equal integrals of the two correlations.
+      smoothVolts: Math.exp((-Math.PI / 4) * along ** 2),
       keptCelsius: celsiusS === null ? 1 : Math.exp(-(reading.s - celsiusS) / LIVE_SPREADS.celsiusDriftS),
     };
     const odd: (OddLook | null)[] = [];

@@ -21,6 +21,8 @@ export interface TerminalLook extends Look {
 export interface Since {
   /** Share of the model's error that is left since the last look at a voltage. */
   keptVolts: number;
+  /** The same for the curve's error, which cannot jump: smooth over the charge. */
+  smoothVolts: number;
   /** Share of the thermometer's that is left. */
   keptCelsius: number;
 }
@@ -147,6 +149,7 @@ export class Looks {
       ...(place === null && amps > 0 ? { otherResidual: one(atModule) } : {}),
       sharedSd: this.modelSd(observation, circuit),
       kept: since.keptVolts,
+      keptSmooth: since.smoothVolts,
       ownVariance: ammeter ** 2 + digit ** 2 + unknownMeter ** 2 + guessed ** 2,
       volts,
       expected: (sample) => count * (place === 'module' ? atModule : atSupply)(sample),

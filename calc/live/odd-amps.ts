@@ -34,6 +34,6 @@ function pastSet(set: ParticleSet, looks: Looks, at: Observation, circuit: Circu
     ...at,
     kept: { ...at.kept, reading: { ...at.kept.reading, terminalVolts: circuit.lane.step.setVolts } },
   };
-  const look = looks.terminal(held, circuit, { keptVolts: 1, keptCelsius: 1 });
+  const look = looks.terminal(held, circuit, { keptVolts: 1, smoothVolts: 1, keptCelsius: 1 });
   return look !== null && set.offOf(look, 0).level * circuit.lane.sign < -ODD_OFF;
 }

@@ -30,7 +30,10 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     : step.groupIndexes.reduce((sum, group) => sum + step.restVoltsAfter[group]!, 0);
   const groupsOf = (state: ModuleState): CellGroup[] => {
     const groups = step.groupIndexes.map((group) => ({
-      ...model.groups[group]!,
+      capacityAh: model.groups[group]!.capacityAh,
+      ohmicResistanceOhm: model.groups[group]!.ohmicResistanceOhm,
+      polarisationResistanceOhm: model.groups[group]!.polarisationResistanceOhm,
+      polarisationTimeConstantS: model.groups[group]!.polarisationTimeConstantS,
       restVolts: voltsAtSoc(model.curve, state.soc[group]!),
       polarisationVolts: state.over[group]!,
     }));
