@@ -9,7 +9,7 @@ import { Table } from '../primitives/table';
 import { Span, Txt } from '../primitives/txt';
 import type { CurveInput } from './curve-layout';
 import { CurvePicture } from './curve-picture';
-import { readCurveText, understoodWords, type CurveRead } from './curve-text';
+import { fileProblem, readCurveText, understoodWords, type CurveRead } from './curve-text';
 import { canPickFile, pickTextFile } from './pick-text-file';
 
 /** A curve as it was pasted or picked; kept while the sheet is closed. */
@@ -43,16 +43,19 @@ export function OwnCurveSheet({
   onSave: (text: string) => void;
   onClose: () => void;
 }) {
-  const [unread, setUnread] = useState(false);
+  const [unread, setUnread] = useState<string | null>(null);
   const read = readCurveText(draft.text, input.chemistry);
   const good = read?.own.ok === true;
   const pick = () =>
     pickTextFile('.csv,.txt,text/csv,text/plain').then(
       (picked) => {
-        setUnread(false);
-        if (picked) onDraft({ text: picked.text, fileName: picked.name });
+        if (!picked) return;
+        const wrong = fileProblem(picked);
+        setUnread(wrong);
+        // What stood there stays: a file that is no table takes nothing away.
+        if (wrong === null) onDraft({ text: picked.text, fileName: picked.name });
       },
-      () => setUnread(true),
+      () => setUnread('The file could not be read. Choose it again, or paste its rows.'),
     );
   return (
     <BottomSheet
@@ -96,7 +99,7 @@ export function OwnCurveSheet({
         ) : null}
         {unread ? (
           <Txt kind="label" tone="alarm" role="alert">
-            The file could not be read. Choose it again, or paste its rows.
+            {unread}
           </Txt>
         ) : null}
         <Field
@@ -105,7 +108,10 @@ export function OwnCurveSheet({
           multiline
           lines={6}
           value={draft.text}
-          onChangeText={(text) => onDraft({ text, fileName: '' })}
+          onChangeText={(text) => {
+            setUnread(null);
+            onDraft({ text, fileName: '' });
+          }}
         />
         {read ? <Understood read={read} input={input} /> : null}
       </View>
