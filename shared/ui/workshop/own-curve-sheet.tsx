@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import { View } from 'react-native';
-import { EN_DASH } from '../format/marks';
+import { EN_DASH, NBSP } from '../format/marks';
 import { BottomSheet } from '../primitives/bottom-sheet';
 import { Button } from '../primitives/button';
 import { CallOut } from '../primitives/call-out';
@@ -91,8 +91,7 @@ export function OwnCurveSheet({
     >
       <View style={{ rowGap: 14 }}>
         <Txt>
-          State of charge and rest volts of one cell side by side, a row each: 8 points or more, from 10 to 90 % of
-          charge.
+          {`State of charge and rest volts of one cell side by side, a row each: 8 points or more, from 10 to 90${NBSP}% of charge.`}
         </Txt>
         {canPickFile ? (
           <Button look="line" icon="upload" title="Choose a CSV file" onPress={() => void pick()} />
