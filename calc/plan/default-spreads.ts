@@ -30,9 +30,9 @@ export const DEFAULT_SPREADS = {
   chargerVolts: 0.005,
   /**
    * The whole curve, one offset a module. A worked budget for one make of cell has 4 mV on the table; a published table also
-   * stands for cells of another maker and another age, for which as much again is common practice: √(4² + 4²) mV.
+   * stands for cells of another maker and another age, for which a guess of the trade is some 6 mV: √(4² + 6²) mV.
    */
-  curveVolts: 0.006,
+  curveVolts: 0.007,
   temperatureCelsius: 2,
   /** Module temperature taken for the room's. */
   temperatureUnreadCelsius: 4,

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { planCharge, reckonCharge, type ChannelParameters } from '@/calc/index';
 import type { LiveReading } from '@/calc/live-types';
 import { reckonInput } from './live-fixtures';
-import { channel, planInput } from './plan-fixtures';
+import { channel, lmoSpare, planInput, target } from './plan-fixtures';
 import { Chance } from './reference/worlds';
 
 /** What a display or a logger makes of the charger's current; the volts are the nominal module's at it. */
@@ -24,15 +24,41 @@ function watched(
   return { at, readings, currentS: option.currentEndS - option.currentStartS };
 }
 
+describe('a discharge', () => {
+  it.each([-1, 1])('read as planned with the sign %d raises nothing and ends where it was to end, to 3 %%', (sign) => {
+    const input = planInput({
+      channels: [channel('A1', { canDischarge: true, dischargeAmps: 10 })],
+      spare: { ...lmoSpare, groupVolts: [3.95, 3.95] },
+      target: { ...target, volts: 3.85 },
+    });
+    const option = planCharge(input).options.find((one) => one.direction === 'discharge' && one.way === 'terminals')!;
+    const endS = option.currentEndS - option.currentStartS;
+    for (const nowS of [600, 1800]) {
+      const seen = reckonCharge(
+        reckonInput(input, option, {
+          nowS,
+          readings: [600, 1200, 1800]
+            .filter((s) => s <= nowS)
+            .map((s) => ({ s, amps: sign * 10, terminalVolts: null, celsius: null, groupVolts: null })),
+        }),
+      );
+      expect(seen.odd).toBeNull();
+      expect(seen.amps).toBeCloseTo(-10, 6);
+      expect(Math.abs(seen.currentEndS / endS - 1)).toBeLessThan(0.03);
+    }
+  });
+});
+
 describe('a current with ripple', () => {
-  it('of 3 % to and fro at 10 s raises nothing at any hour, and has the ampere-hours and the end of its mean to 1 %', () => {
+  it('of 3 % to and fro at 10 s raises nothing at any hour, has the ampere-hours of its mean to 1 % and the end to 4 %', () => {
     const chance = new Chance(5);
     const { at, currentS } = watched(10, 10, 5400, () => 10 * (1 + 0.03 * Math.sin(2 * Math.PI * chance.uniform())));
     for (const nowS of [600, 1800, 3600, 5400]) {
       const seen = at(nowS);
       expect(seen.odd).toBeNull();
       expect(Math.abs(seen.deliveredAh / ((10 * nowS) / 3600) - 1)).toBeLessThan(0.01);
-      expect(Math.abs(seen.currentEndS / currentS - 1)).toBeLessThan(0.03);
+      // Seven kinds of draws are resampled by the current alone: the middle of 256 samples scatters by some 3 % of what is left.
+      expect(Math.abs(seen.currentEndS / currentS - 1)).toBeLessThan(0.04);
     }
   });
 });

@@ -10,7 +10,7 @@ import {
 } from '@/calc/index';
 import type { LiveReading } from '@/calc/live-types';
 import type { PlanInput, PlanOption } from '@/calc/plan-types';
-import type { CellGroup, StepInput, StepResult } from '@/calc/types';
+import type { CellGroup, OcvTable, StepInput, StepResult } from '@/calc/types';
 
 /** Random numbers apart from the code under test: a linear congruential generator of 64 bits, its high word, and Box–Muller. */
 export class Chance {
