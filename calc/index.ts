@@ -11,16 +11,35 @@ export { joiningInrush, type JoiningInrush } from './joining-inrush';
 export { setVoltageCap, type SetVoltageCap } from './set-voltage-cap';
 export { chemistryParameters, guessedLongResistance } from './chemistry';
 export { CHEMISTRIES, type ChemistryParameters } from './parameters/chemistries';
+export { PUBLISHED_CURVES, publishedCurves, type PublishedCurve } from './parameters/published-curves';
+export { checkOwnCurve, type CurveProblem, type OwnCurve } from './curve/own-curve';
 export { longResistance, splitLongResistance } from './resistance/long-resistance';
+export { pulseTimeConstant, type PulseResistance } from './resistance/pulse-time-constant';
 export { resistanceTemperatureFactor } from './resistance/temperature-factor';
 export { temperatureVolts } from './parameters/temperature-coefficient';
 export { quantile, quantileOfSorted } from './statistics/quantile';
 export { seededRandom } from './statistics/seeded-random';
 export { latinHypercube, latinHypercubeNormal, shuffled } from './statistics/latin-hypercube';
 export { inverseNormal } from './statistics/inverse-normal';
+export { normalCdf } from './statistics/normal-cdf';
+export { predictRest, type RestForecast, type RestOptions, type RestReading } from './rest/predict-rest';
+export { combineFigures, type CombinedFigure, type Figure } from './learn/figure';
+export {
+  capacityFromTwoReadings,
+  type GroupCapacity,
+  type TwoReadings,
+  type TwoReadingsCapacity,
+} from './learn/two-readings';
+export {
+  resistanceFromReadings,
+  type ResistanceFound,
+  type ResistanceReadings,
+} from './learn/resistance-from-readings';
+export { learnedFactor, type ClosedCharge, type LearnedFactor } from './learn/learned-factor';
 
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
+export { withTimeFactor } from './plan/time-factor';
 export { judgeCheck } from './plan/judge-check';
 export { reckonCharge } from './live/reckon-charge';
 export { quickEstimate, type QuickEstimate, type QuickNumbers, type QuickWay } from './plan/estimate';

@@ -20,6 +20,37 @@ export interface LiveReading {
   amps: number | null;
   celsius: number | null;
   groupVolts: number[] | null;
+  /**
+   * Where `terminalVolts` was read: at the supply's own terminals or at the module. Left out: at the module for a charger that
+   * senses there, else it may be either.
+   */
+  takenAt?: 'supply' | 'module';
+  /** Meter it was read with; left out or null: the charger's own display for `terminalVolts`, an unknown one for the groups. */
+  meterId?: string | null;
+}
+
+export type OddKind = 'voltage-jump' | 'no-current' | 'stuck-current' | 'group-ahead' | 'too-warm' | 'unexplained';
+
+/** A reading that no sample explains. It is not learned from. */
+export interface OddSeen {
+  kind: OddKind;
+  /** What `seen` and `expected` are: V between the clips, A, V of a group, °C. */
+  quantity: 'terminal-volts' | 'amps' | 'group-volts' | 'celsius';
+  /** 0-based, where it is one group's. */
+  group: number | null;
+  seen: number;
+  expected: number;
+  /** Instant of the first of them, s, and how many readings in a row are so. */
+  sinceS: number;
+  readings: number;
+}
+
+/** A number of the module or its leads, before and after the readings of this charge. */
+export interface Learned {
+  mean: number;
+  sd: number;
+  priorMean: number;
+  priorSd: number;
 }
 
 /** Stretches in which current may flow: begin and end (null: still) of clip-on, hold, resume. */
@@ -88,4 +119,15 @@ export interface Reckoning {
    * one with volts and amps; null without one. Below some hundredths no sample explains it.
    */
   readingChance: number | null;
+  /** What is odd about the latest readings; null: nothing, or it has passed. */
+  odd: OddSeen | null;
+  /** What this charge has taught; null each where its readings have not told. */
+  learned: {
+    /** Mean of the groups, Ah. */
+    capacityAh: Learned | null;
+    /** R0 + R1, mean of the groups, ohm. */
+    longOhm: Learned | null;
+    /** Of the charger that ran last, ohm. */
+    leadOhm: Learned | null;
+  };
 }

@@ -31,7 +31,14 @@ export interface ModuleParameters {
   /** Per group, ohm; null: the chemistry's guess scaled by capacity. */
   resistanceOhm: number | null;
   resistanceKind: ResistanceKind;
+  /** Of the over-voltage that builds up, s, where it was read (pulseTimeConstant); null or left out: the chemistry's guess. */
+  polarisationTimeConstantS?: number | null;
   linkResistanceOhm: number;
+  /** Share of its charge current below 10 °C and above 45 °C; charger chips have 0.2 to 0.4 (JEITA); left out: all of it. */
+  coldCurrentShare?: number | null;
+  warmCurrentShare?: number | null;
+  /** A group that rests below this is first brought up to it at C/10, V; null or left out: no such step. */
+  prechargeBelowVolts?: number | null;
   /** The workshop's own curve; null: the chemistry's. */
   curve: OcvTable | null;
   /** Share of rated capacity lost from the charge a month on the shelf; null: the chemistry's. */
@@ -54,8 +61,15 @@ export interface SpareState {
 }
 
 export interface TargetState {
-  /** Rest voltage per group, V. */
+  /** Rest voltage per group, V; does not count where `soc` is given. */
   volts: number;
+  /**
+   * The pack's state of charge, 0…1, typed or from its own counter, in place of the volts: where voltage says little of it
+   * (LFP and NiMH on their plateau), the charge is then counted from full or empty.
+   */
+  soc?: number | null;
+  /** Standard deviation of `soc`; default 0.02, a guess. */
+  socSd?: number | null;
   toleranceVolts: number;
   meterId: string | null;
   celsius: number | null;
@@ -77,7 +91,15 @@ export interface ChannelParameters {
   /** Where it measures its voltage. */
   senses: 'own-terminals' | 'module';
   leadResistanceOhm: number;
+  /** False: the leads are a guess (10 mΩ where `leadResistanceOhm` is 0) and so doubtful. Left out: as given. */
+  leadsMeasured?: boolean;
   displayStepVolts: number;
+  /** What its current is set and shown in, A; left out: without steps. */
+  displayStepAmps?: number;
+  /** It gives only this share of its current in a room warmer than that. */
+  derating?: { aboveCelsius: number; ampsShare: number } | null;
+  /** Share of the time in which it gives current, between thermal pauses; left out: all of it. */
+  duty?: number;
   singleGroup: boolean;
   canDischarge: boolean;
   dischargeAmps: number | null;
@@ -86,6 +108,18 @@ export interface ChannelParameters {
   freeInS: number;
   /** Meter cross-checked with the workshop's, mV; null: never. */
   offsetSdVolts: number | null;
+  /** Learned of this module type on this charger; null: taken off; left out: the plan's. */
+  timeFactor?: TimeFactor | null;
+}
+
+/** By how much charges take longer than reckoned, learned from closed ones (learnedFactor). */
+export interface TimeFactor {
+  /** Multiplies the seconds of current. */
+  mean: number;
+  /** How far the next charge may be off that, in the same unit as the mean. */
+  sd: number;
+  /** Closed charges behind it. */
+  charges: number;
 }
 
 export interface ResistorParameters {
@@ -137,6 +171,13 @@ export interface PlanInput {
   samples?: number;
   /** Standard deviations that stand in place of the defaults (calc/plan/default-spreads.ts). */
   spreads?: Partial<Spreads>;
+  /** Learned of this module type, for channels without one of their own; null or left out: none. */
+  timeFactor?: TimeFactor | null;
+  /**
+   * Whether a person takes the wide band of a voltage target on the plateau of LFP or NiMH. False: such a plan is refused,
+   * with the band it would have. Left out: it is offered with its cautions.
+   */
+  acceptWideBand?: boolean;
 }
 
 /** How far each number may be off: one standard deviation, unless said otherwise. */
@@ -201,6 +242,8 @@ export interface PlannedStep {
   wattHours: number;
   endAmps: number;
   voltageLimitAtS: number | null;
+  /** Brings low groups up at C/10, before the charge proper. */
+  precharge?: true;
   /** Rest voltages per group after it has settled, V (of all groups of the module). */
   restVoltsAfter: number[];
 }
@@ -218,7 +261,15 @@ export interface TracePlanPoint {
 }
 
 export type Doubt =
-  'capacity' | 'resistance' | 'current' | 'spare-reading' | 'target-reading' | 'curve' | 'temperature';
+  | 'capacity'
+  | 'resistance'
+  | 'current'
+  | 'spare-reading'
+  | 'target-reading'
+  | 'curve'
+  | 'temperature'
+  | 'charger'
+  | 'leads';
 
 export interface Caution {
   code:
@@ -292,6 +343,14 @@ export interface PlanOption {
   /** How many seconds the 10–90 % band would narrow were the dominant number known. */
   narrowsByS: number;
   cautions: Caution[];
+  /** Charged to full (or discharged to empty) first and counted from there; left out: by voltage. */
+  knownEnd?: 'full' | 'empty';
+  /** State of charge that it ends at, by the doubt of the capacity; with `knownEnd` only. */
+  endSoc?: Band;
+  /** What closed charges have taught of its times, already in the band; left out: nothing. */
+  timeFactor?: TimeFactor;
+  /** 'Learned from 14 charges: 6 % longer than reckoned.' */
+  timeFactorText?: string;
 }
 
 export interface RuledOutWay {
@@ -316,6 +375,8 @@ export interface Refusal {
   /** 0-based, where one group is the reason. */
   group: number | null;
   text: string;
+  /** Refused because the curve is flat at the target: what the soonest way would take all the same, and where it would end. */
+  plateau?: { totalS: Band; soc: Band };
 }
 
 export interface ChargePlan {

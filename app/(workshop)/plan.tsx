@@ -8,6 +8,7 @@ import { RefusedFoot } from '@/shared/screens/plan/refused-foot';
 import { useKeep } from '@/shared/screens/plan/use-keep';
 import { usePlanPage } from '@/shared/screens/plan/use-plan-page';
 import { OutcomeLine } from '@/shared/ui/plan/plan-outcome';
+import { isPlateau } from '@/shared/ui/plan/plan-plateau';
 import type { PlanTyped } from '@/shared/ui/plan/plan-typed';
 import { Columns } from '@/shared/ui/screen/columns';
 import { Foot } from '@/shared/ui/screen/foot';
@@ -32,7 +33,8 @@ export default function Plan() {
     change({ spareId });
   };
   const acts = <KeepActs page={page} keep={keep} />;
-  const foot = refused ? (
+  const plateau = dto !== null && isPlateau(dto.plan.refusals);
+  const foot = plateau ? undefined : refused ? (
     <RefusedFoot
       spare={spare}
       next={others[0]?.spare ?? null}
@@ -47,7 +49,7 @@ export default function Plan() {
       <Columns
         order={['facts', 'work', 'side']}
         facts={<PlanFacts page={page} onChange={change} />}
-        work={<PlanWaysPart page={page} onTake={take} />}
+        work={<PlanWaysPart page={page} onTake={take} onChange={change} />}
         side={<PlanSide page={page} acts={acts} />}
       />
     </Screen>

@@ -1,13 +1,13 @@
-import type { ReckonInput, Reckoning } from '../live-types';
+import type { Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import { livePast } from './live-rounds';
+import { livePast, type ReplayInput } from './live-rounds';
 import { restVolts } from './module-state';
 
 /** What the plan expects at the instant of the last reading: the same stretches, no readings. Null without a reading. */
-export function expectedAt(model: PlanModel, input: ReckonInput): Reckoning['expected'] {
-  const last = input.readings.findLast((reading) => reading.s <= input.nowS);
+export function expectedAt(model: PlanModel, replay: ReplayInput, nowS: number): Reckoning['expected'] {
+  const last = replay.readings.findLast((reading) => reading.s <= nowS);
   if (!last) return null;
-  const plan = livePast(model, { ...input, readings: [] }, last.s);
+  const plan = livePast(model, { ...replay, readings: [] }, last.s);
   const round = plan.begun[plan.begun.length - 1]!;
   const flowing = round.open;
   const lane = round.lanes[0]!;

@@ -31,6 +31,8 @@ export interface Lane {
   index: number;
   step: PlannedStep;
   sign: 1 | -1;
+  /** Constant current as set, over thermal pauses its mean, positive; null: a resistor rules. */
+  setAmps: number | null;
   /** On the mark trickles on after its end without harm: amps up to here say nothing; 0: any current after the end counts. */
   trickleAmps: number;
   /** Groups whose state the current moves. */
@@ -43,6 +45,8 @@ export interface Lane {
   moved: (state: ModuleState, fromAmps: number, toAmps: number, seconds: number) => ModuleState;
   /** Volts between the clips. */
   clipVolts: (state: ModuleState, amps: number) => number;
+  /** Within reach of its end at these amps: there only a run of the model says whether it has ended. */
+  isNearEnd: (state: ModuleState, amps: number) => boolean;
   /** Whether a reading between the clips says that the set voltage rules. */
   atSetVolts: (terminalVolts: number, amps: number) => boolean;
   /** Drive that explains a reading in the taper. */

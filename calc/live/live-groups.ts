@@ -1,7 +1,8 @@
-import type { ReckonInput, Reckoning } from '../live-types';
+import type { Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import { livePast, type LivePast, type LiveRound } from './live-rounds';
-import { restVolts, type ModuleState } from './module-state';
+import type { LivePast, LiveRound } from './live-rounds';
+import { restVolts } from './module-state';
+import type { KeptReading } from './thin-readings';
 import { socsOf, withSeenDifferences } from './rest-readings';
 
 /** A lag below this is noise, V. */
@@ -16,14 +17,14 @@ export interface LiveGroups {
 /** Each group at `nowS`, and the one that lags behind the one that leads. */
 export function toGroups(
   model: PlanModel,
-  input: ReckonInput,
+  kept: readonly KeptReading[],
   past: LivePast,
   current: LiveRound,
   flowing: boolean,
   seenAtRest: readonly number[] | null,
 ): LiveGroups {
   const reckoned = restVolts(model, past.state.soc);
-  const rest = seenAtRest ? [...seenAtRest] : withSeenDifferences(reckoned, seenUnderCurrent(model, input, current));
+  const rest = seenAtRest ? [...seenAtRest] : withSeenDifferences(reckoned, seenUnderCurrent(model, kept, current));
   const soc = socsOf(model, rest);
   const groups = rest.map((volts, group) => ({
     restVolts: volts,
@@ -52,24 +53,20 @@ function ohmicVolts(model: PlanModel, current: LiveRound, group: number): number
 /** The last reading of all groups while current went through all of them, beside what was reckoned for that moment. */
 function seenUnderCurrent(
   model: PlanModel,
-  input: ReckonInput,
+  kept: readonly KeptReading[],
   current: LiveRound,
 ): { volts: readonly number[]; reckoned: readonly number[] } | null {
   const lane = current.lanes[0]!;
   if (lane.step.way !== 'terminals' || lane.step.groupIndexes.length !== model.groups.length) return null;
-  const from = current.stretches[0]?.fromS ?? 0;
-  const until = current.endedAtS ?? Infinity;
-  const reading = input.readings.findLast(
-    (one) => one.groupVolts?.length === model.groups.length && one.s >= from && one.s <= Math.min(until, input.nowS),
+  const until = Math.min(current.endedAtS ?? Infinity, current.stretches[current.stretches.length - 1]?.toS ?? 0);
+  const { knots } = current.pasts[0]!;
+  const knot = knots.findLast(({ index }) => {
+    const { reading } = kept[index]!;
+    return reading.groupVolts?.length === model.groups.length && reading.s <= until;
+  });
+  if (!knot) return null;
+  const reckoned = restVolts(model, knot.state.soc).map(
+    (volts, group) => volts + knot.state.over[group]! + lane.sign * knot.amps * model.groups[group]!.ohmicResistanceOhm,
   );
-  if (!reading) return null;
-  const then = livePast(model, input, reading.s);
-  const round = then.begun[then.begun.length - 1]!;
-  return { volts: reading.groupVolts!, reckoned: clipVoltsOf(model, then.state, round) };
-}
-
-function clipVoltsOf(model: PlanModel, state: ModuleState, round: LiveRound): number[] {
-  return restVolts(model, state.soc).map(
-    (volts, group) => volts + state.over[group]! + ohmicVolts(model, round, group),
-  );
+  return { volts: kept[knot.index]!.reading.groupVolts!, reckoned };
 }

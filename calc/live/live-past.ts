@@ -1,43 +1,9 @@
-import type { LiveReading } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import { AS_SET, type Drive, type Lane } from './lane';
-import { rested, type ModuleState } from './module-state';
-
-/** A stretch in which current may flow, both ends known. */
-export interface Stretch {
-  fromS: number;
-  toS: number;
-}
-
-/** Readings of the current on one lane, positive amps. */
-export interface AmpsReading {
-  s: number;
-  amps: number;
-  terminalVolts: number | null;
-}
-
-export interface LanePast {
-  state: ModuleState;
-  /** End of current, s; null: not yet. */
-  endedAtS: number | null;
-  /** From when a voltage limit ruled, s; null: not so far. */
-  taperAtS: number | null;
-  /** At the terminals, positive, Ah. */
-  deliveredAh: number;
-  /** Positive, at the end of the last stretch. */
-  amps: number;
-  drive: Drive;
-  /** The last reading showed no current while some was due. */
-  noCurrent: boolean;
-  /** The last reading showed current after the reckoned end. */
-  overrun: boolean;
-}
-
-/** Below this share of the set current, or of the planned end current, a reading says that none flows. */
-const ZERO_OF_SET = 0.01;
-const ZERO_OF_END = 0.5;
-/** A model current this near to the set one is constant current. */
-const CONSTANT_SHARE = 0.97;
+import { AS_SET, type Lane } from './lane';
+import { end, note, restTouched } from './lane-moves';
+import { isAmpsReading, type Knot, type LanePast, type LaneReading, type Stretch } from './lane-past';
+import type { ModuleState } from './module-state';
+import { glide, takeReading } from './take-reading';
 
 /**
  * What one lane's current has done to the module until `nowS`.
@@ -54,7 +20,7 @@ export function lanePast(
   lane: Lane,
   start: ModuleState,
   stretches: Stretch[],
-  readings: AmpsReading[],
+  readings: LaneReading[],
   nowS: number,
   saidOff = false,
 ): LanePast {
@@ -67,6 +33,8 @@ export function lanePast(
     drive: AS_SET,
     noCurrent: false,
     overrun: false,
+    knots: [],
+    endState: start,
   };
   for (const { fromS, toS } of stretches) {
     const endS = Math.min(toS, nowS);
@@ -75,58 +43,54 @@ export function lanePast(
     past.noCurrent = false;
     let before: number | null = null;
     for (const reading of readings.filter(({ s }) => s >= fromS && s <= endS)) {
-      takeReading(model, lane, past, before, reading);
-      before = reading.amps;
+      if (isAmpsReading(reading)) {
+        if (!glide(lane, past, before, reading)) takeReading(model, lane, past, before, reading);
+        before = reading.amps;
+        past.knots.push(knotOf(lane, past, reading, past.state));
+      } else {
+        const seen = peek(model, lane, past, reading.s);
+        past.knots.push(knotOf(lane, past, reading, seen.state, seen));
+      }
     }
     runOn(model, lane, past, endS, saidOff && toS === stretches[stretches.length - 1]!.toS);
   }
+  if (past.endedAtS === null) past.endState = past.state;
   past.state = restTouched(model, lane, past.state, nowS);
   return past;
 }
 
-const restTouched = (model: PlanModel, lane: Lane, state: ModuleState, toS: number): ModuleState =>
-  rested(model, state, toS, lane.touched);
+/** The state at a reading without amps, which changes nothing, and the charge since the last one with. */
+function peek(
+  model: PlanModel,
+  lane: Lane,
+  past: LanePast,
+  s: number,
+): { state: ModuleState; ampHours: number; over: boolean } {
+  const rests = past.noCurrent || past.endedAtS !== null;
+  if (rests) return { state: restTouched(model, lane, past.state, s), ampHours: 0, over: past.endedAtS !== null };
+  const ahead = lane.forward(past.state, past.drive, Math.max(0, s - past.state.s), past.overrun);
+  return { state: restTouched(model, lane, ahead.state, s), ampHours: ahead.ampHours, over: ahead.ended };
+}
 
-function takeReading(model: PlanModel, lane: Lane, past: LanePast, before: number | null, reading: AmpsReading): void {
-  const { s, amps } = reading;
-  const zero = amps <= zeroBelow(lane);
-  const trickle = amps <= lane.trickleAmps;
-  const seconds = s - past.state.s;
-  if (past.endedAtS !== null && (zero || trickle)) {
-    past.state = restTouched(model, lane, past.state, s);
-    past.overrun = false;
-    return;
-  }
-  const ahead = lane.forward(past.state, past.drive, Math.max(seconds, 0));
-  if (zero && ahead.ended && past.endedAtS === null && before !== 0) {
-    // It came to its end between two looks, and somebody has switched it off.
-    end(model, lane, past, ahead.seconds, ahead.state, ahead.ampHours, ahead.taperAfterS);
-    past.state = restTouched(model, lane, past.state, s);
-    return;
-  }
-  const tapering = ahead.taperAfterS !== null && ahead.taperAfterS < seconds;
-  if (before === null && tapering && !ahead.ended) {
-    // Nobody has looked before the taper: the model's course up to here stands.
-    note(past, ahead.taperAfterS, ahead.ampHours);
-    past.state = ahead.state;
-  } else {
-    const from = before ?? amps;
-    const constantS = tapering && amps < from ? ahead.taperAfterS! : 0;
-    if (tapering) past.taperAtS ??= past.state.s + ahead.taperAfterS!;
-    advance(lane, past, from, from, constantS);
-    const falling = constantS > 0 && amps > 0 && amps < from;
-    advance(lane, past, falling ? 2 * logMean(from, amps) - amps : from, amps, seconds - constantS);
-  }
-  past.amps = amps;
-  past.noCurrent = zero;
-  if (zero) {
-    past.drive = AS_SET;
-    return;
-  }
-  past.drive = driveFrom(lane, past, reading);
-  const there = lane.forward(past.state, past.drive, 0).ended;
-  past.overrun = there && !trickle;
-  past.endedAtS = there && trickle ? (past.endedAtS ?? s) : null;
+function knotOf(
+  lane: Lane,
+  past: LanePast,
+  reading: LaneReading,
+  state: ModuleState,
+  ahead = { ampHours: 0, over: past.endedAtS !== null },
+): Knot {
+  const { over } = ahead;
+  return {
+    index: reading.index,
+    state,
+    deliveredAh: past.deliveredAh + ahead.ampHours,
+    amps: past.noCurrent || over ? 0 : (reading.readAmps ?? reading.amps ?? lane.ampsAt(state, past.drive)),
+    dueAmps: lane.ampsAt(state, AS_SET),
+    paused: reading.paused ?? false,
+    tapering: past.taperAtS !== null,
+    noCurrent: past.noCurrent && !over,
+    over,
+  };
 }
 
 /** The model from the last reading (or the start) of a stretch to its end. */
@@ -148,55 +112,3 @@ function runOn(model: PlanModel, lane: Lane, past: LanePast, endS: number, onwar
   past.state = ahead.state;
   past.amps = Math.abs(ahead.amps);
 }
-
-function end(
-  model: PlanModel,
-  lane: Lane,
-  past: LanePast,
-  seconds: number,
-  state: ModuleState,
-  ampHours: number,
-  taperAfterS: number | null,
-): void {
-  past.endedAtS = past.state.s + seconds;
-  note(past, taperAfterS, ampHours);
-  past.state = state;
-  past.amps = 0;
-}
-
-function note(past: LanePast, taperAfterS: number | null, ampHours: number): void {
-  if (taperAfterS !== null) past.taperAtS ??= past.state.s + taperAfterS;
-  past.deliveredAh += ampHours;
-}
-
-function advance(lane: Lane, past: LanePast, fromAmps: number, toAmps: number, seconds: number): void {
-  if (seconds <= 0) return;
-  past.deliveredAh += ((fromAmps + toAmps) / 2) * (seconds / 3600);
-  past.state = lane.moved(past.state, fromAmps, toAmps, seconds);
-}
-
-function driveFrom(lane: Lane, past: LanePast, reading: AmpsReading): Drive {
-  const set = lane.step.setAmps;
-  if (set === null) return lane.driveInTaper(past.state, reading.amps);
-  const byModel = lane.ampsAt(past.state, AS_SET) < set * CONSTANT_SHARE;
-  const byVolts = reading.terminalVolts !== null && lane.atSetVolts(reading.terminalVolts, reading.amps);
-  if (reading.amps < set * CONSTANT_SHARE && (byModel || byVolts)) {
-    past.taperAtS ??= reading.s;
-    return lane.driveInTaper(past.state, reading.amps);
-  }
-  return { maxAmps: reading.amps, setShiftVolts: 0, seenInTaper: false };
-}
-
-function zeroBelow({ step }: Lane): number {
-  const set = (step.setAmps ?? Math.abs(step.endAmps)) * ZERO_OF_SET;
-  return Math.max(0.005, Math.min(set, Math.abs(step.endAmps) * ZERO_OF_END));
-}
-
-const logMean = (first: number, second: number): number =>
-  Math.abs(first - second) < 1e-9 * first ? first : (first - second) / Math.log(first / second);
-
-/** Readings with amps, as one lane of `shareOf` the current sees them. */
-export const ampsReadings = (readings: readonly LiveReading[], shareOf: number, alone: boolean): AmpsReading[] =>
-  readings.flatMap(({ s, amps, terminalVolts }) =>
-    amps === null ? [] : [{ s, amps: Math.abs(amps) * shareOf, terminalVolts: alone ? terminalVolts : null }],
-  );

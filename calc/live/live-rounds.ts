@@ -1,8 +1,10 @@
 import type { ReckonInput, RunStretch } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import { ampsReadings, lanePast, type LanePast, type Stretch } from './live-past';
+import { laneReadings, type LanePast, type LaneReading, type Stretch } from './lane-past';
+import { lanePast } from './live-past';
 import { laneOf, liveRounds } from './live-model';
 import type { Lane } from './lane';
+import { overPauses } from './pauses';
 import { rested, stateAtStart, type ModuleState } from './module-state';
 
 /** Steps that were begun together, and what they have done. */
@@ -17,10 +19,14 @@ export interface LiveRound {
   open: boolean;
   /** Last current so far or reached end, s; while it runs: null. */
   endedAtS: number | null;
+  /** Charge that had gone into each group before, Ah. */
+  movedBeforeAh: number[];
 }
 
 /** What a replay needs. */
-export type ReplayInput = Pick<ReckonInput, 'option' | 'runs' | 'readings' | 'currentOffAtS'>;
+export type ReplayInput = Pick<ReckonInput, 'option' | 'runs' | 'currentOffAtS'> & {
+  readings: readonly LaneReading[];
+};
 
 export interface LivePast {
   rounds: number[][];
@@ -62,7 +68,7 @@ export function livePast(model: PlanModel, input: ReplayInput, nowS: number): Li
 
 function liveRound(
   model: PlanModel,
-  input: Pick<ReckonInput, 'option' | 'readings'>,
+  input: Pick<ReplayInput, 'option' | 'readings'>,
   past: LivePast,
   round: number,
   runs: RunStretch[],
@@ -77,10 +83,13 @@ function liveRound(
   const total = lanes.reduce((sum, lane) => sum + (lane.step.setAmps ?? 0), 0);
   const pasts = lanes.map((lane) => {
     const share = lanes.length === 1 || total === 0 ? 1 / lanes.length : (lane.step.setAmps ?? 0) / total;
-    const seen = ampsReadings(input.readings, share, lanes.length === 1);
+    const seen = laneReadings(input.readings, share, lanes.length === 1);
     // Of clips side by side it is not known which of them was switched off last.
-    return lanePast(model, lane, start, stretches, seen, untilS, saidOff && lanes.length === 1);
+    const channel = model.input.channels.find((one) => one.channelId === lane.step.channelIds[0]);
+    const meant = overPauses(seen, lane.step.setAmps, channel?.duty ?? 1);
+    return lanePast(model, lane, start, stretches, meant, untilS, saidOff && lanes.length === 1);
   });
+  const movedBeforeAh = [...past.movedAh];
   past.state = merged(model, start, lanes, pasts, untilS);
   lanes.forEach((lane, at) => addMoved(model, past, lane, pasts[at]!.deliveredAh));
   const last = stretches[stretches.length - 1];
@@ -92,6 +101,7 @@ function liveRound(
     stretches: stretches.map(({ fromS, toS }) => ({ fromS, toS: Math.min(toS, untilS) })),
     open: last !== undefined && last.toS > untilS && !done,
     endedAtS: done ? Math.max(...pasts.map((one) => one.endedAtS!)) : null,
+    movedBeforeAh,
   });
 }
 
@@ -111,12 +121,20 @@ function merged(model: PlanModel, start: ModuleState, lanes: Lane[], pasts: Lane
 function addMoved(model: PlanModel, past: LivePast, lane: Lane, ampHours: number): void {
   if (lane.step.kind === 'pre-level') return;
   past.deliveredAh += ampHours;
+  past.movedAh = movedAfter(model, past.movedAh, lane, ampHours);
+}
+
+/** Charge gone into each group at its terminals after so many ampere-hours of a lane, Ah. */
+export function movedAfter(model: PlanModel, before: readonly number[], lane: Lane, ampHours: number): number[] {
+  const moved = [...before];
+  if (lane.step.kind === 'pre-level') return moved;
   const groups = lane.step.groupIndexes;
   const capacity = groups.reduce((sum, group) => sum + model.groups[group]!.capacityAh, 0);
   for (const group of groups) {
     const share = lane.step.way === 'paralleled' ? model.groups[group]!.capacityAh / capacity : 1;
-    past.movedAh[group]! += lane.sign * ampHours * share;
+    moved[group]! += lane.sign * ampHours * share;
   }
+  return moved;
 }
 
 function roundOf(rounds: number[][], run: RunStretch): number {

@@ -6,10 +6,14 @@ import type { PlanModel } from '../plan/plan-model';
 import type { CellGroup, Source } from '../types';
 import type { Drive, Forward, Lane } from './lane';
 import type { ModuleState } from './module-state';
+import { meanSetAmps, plannedSource } from './planned-source';
 
-/** On the mark: the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
+/** In other tapers the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
 const END_AMPS_SHARE = 0.98;
 const LEAST_END_AMPS = 1e-3;
+/** Near the end: amps within this many times the planned end current, rest voltage within this of the aim, V a group. */
+const NEAR_END_AMPS = 2;
+const NEAR_END_VOLTS = 0.002;
 /** Times the planned end current that may still flow once on the mark is reached. */
 const TRICKLE = 1.5;
 
@@ -19,13 +23,17 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
   const joined = step.way === 'paralleled';
   const { module } = model.input;
   const linkOhm = step.way === 'terminals' ? module.linkResistanceOhm : 0;
-  const source = plannedSource(step, channel);
+  const source = plannedSource(model, step, channel);
+  const setAmps = meanSetAmps(step, channel);
   const aimVolts = joined
     ? step.restVoltsAfter[step.groupIndexes[0]!]!
     : step.groupIndexes.reduce((sum, group) => sum + step.restVoltsAfter[group]!, 0);
   const groupsOf = (state: ModuleState): CellGroup[] => {
     const groups = step.groupIndexes.map((group) => ({
-      ...model.groups[group]!,
+      capacityAh: model.groups[group]!.capacityAh,
+      ohmicResistanceOhm: model.groups[group]!.ohmicResistanceOhm,
+      polarisationResistanceOhm: model.groups[group]!.polarisationResistanceOhm,
+      polarisationTimeConstantS: model.groups[group]!.polarisationTimeConstantS,
       restVolts: voltsAtSoc(model.curve, state.soc[group]!),
       polarisationVolts: state.over[group]!,
     }));
@@ -48,7 +56,8 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
 
   const count = joined ? 1 : step.groupIndexes.length;
   const onTheMark = source.setVolts !== null && Math.abs(source.setVolts - aimVolts) <= model.toleranceVolts * count;
-  const tapers = source.setVolts !== null && endsByAmps(step);
+  const tapers = source.setVolts !== null && endsByAmps(step, setAmps);
+  const byAmps = onTheMark && tapers;
   const forward = (state: ModuleState, drive: Drive, maxSeconds: number | null, onwards = false): Forward => {
     const groups = groupsOf(state);
     const result = chargeThroughTerminals({
@@ -59,9 +68,11 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
       direction: step.direction,
       source: driven(drive),
       stop: {
-        relaxedVolts: onwards ? null : aimVolts,
-        toleranceVolts: onwards ? 0 : 1e-9,
-        cutoffAmps: tapers && !onwards ? Math.max(Math.abs(step.endAmps) * END_AMPS_SHARE, LEAST_END_AMPS) : null,
+        // On the mark people go by the amps; where the module stands then is as well as the charge is known.
+        relaxedVolts: onwards || byAmps ? null : aimVolts,
+        toleranceVolts: onwards || byAmps ? 0 : 1e-9,
+        cutoffAmps:
+          tapers && !onwards ? Math.max(Math.abs(step.endAmps) * (byAmps ? 1 : END_AMPS_SHARE), LEAST_END_AMPS) : null,
         groupVolts: null,
         maxSeconds,
       },
@@ -99,6 +110,7 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     index,
     step,
     sign,
+    setAmps,
     trickleAmps: onTheMark ? TRICKLE * Math.abs(step.endAmps) : 0,
     touched: step.groupIndexes,
     forward,
@@ -133,6 +145,13 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
       return (
         electromotive(groups) + sign * amps * groups.reduce((sum, group) => sum + group.ohmicResistanceOhm, linkOhm)
       );
+    },
+    isNearEnd: (state, amps) => {
+      if (tapers && amps < NEAR_END_AMPS * Math.abs(step.endAmps)) return true;
+      const rest = joined
+        ? voltsAtSoc(model.curve, joinedSoc(model, state, step))
+        : step.groupIndexes.reduce((sum, group) => sum + voltsAtSoc(model.curve, state.soc[group]!), 0);
+      return sign * (aimVolts - rest) < NEAR_END_VOLTS * count;
     },
     atSetVolts: (terminalVolts, amps) =>
       source.setVolts !== null &&
@@ -178,17 +197,6 @@ function meanOver(state: ModuleState, step: PlannedStep): number {
 }
 
 /** A step that was planned to end in a taper and not in constant current. */
-function endsByAmps(step: PlannedStep): boolean {
-  return step.voltageLimitAtS !== null && step.setAmps !== null && Math.abs(step.endAmps) < step.setAmps * 0.9;
-}
-
-function plannedSource(step: PlannedStep, channel: ChannelParameters): Source {
-  return {
-    maxAmps: step.setAmps ?? channel.dischargeAmps,
-    setVolts: step.setVolts,
-    maxWatts: channel.maxWatts,
-    leadResistanceOhm: channel.senses === 'module' ? 0 : channel.leadResistanceOhm,
-    heldGroupVolts: null,
-    loadOhm: step.direction === 'discharge' ? channel.loadOhm : null,
-  };
+function endsByAmps(step: PlannedStep, setAmps: number | null): boolean {
+  return step.voltageLimitAtS !== null && setAmps !== null && Math.abs(step.endAmps) < setAmps * 0.9;
 }

@@ -5,6 +5,8 @@ import type { Sample } from './samples';
 /** One step of a way before it has its place on the clock. */
 export interface DraftStep {
   kind: StepKind;
+  /** Brings low groups up at C/10. */
+  precharge?: true;
   way: Way;
   channel: ChannelParameters | null;
   resistorId: string | null;
@@ -50,6 +52,10 @@ export interface Draft {
   busbarsOff: boolean;
   takes: string;
   cautions: Caution[];
+  /** Charged to full or discharged to empty first, and counted from there. */
+  knownEnd?: 'full' | 'empty';
+  /** State of charge it ends at in one sample; with `knownEnd`. */
+  endSocIn?: (sample: Sample) => number;
 }
 
 /** Why a way cannot be done, in place of a draft. */

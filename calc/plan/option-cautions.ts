@@ -1,5 +1,6 @@
 import type { Caution, PlanOption } from '../plan-types';
 import type { Draft } from './draft';
+import { leadOhmOf } from './leads';
 import type { PlanModel } from './plan-model';
 import { ampsText, durationText, groupText, millivoltsText } from './words';
 
@@ -68,12 +69,12 @@ export function optionCautions(model: PlanModel, draft: Draft, option: PlanOptio
       (step) =>
         step.channel !== null &&
         step.channel.senses === 'own-terminals' &&
-        (draft.amps * step.channel.leadResistanceOhm) / step.groupsAcross > LEAD_DROP_VOLTS,
+        (draft.amps * leadOhmOf(step.channel)) / step.groupsAcross > LEAD_DROP_VOLTS,
     );
     if (thin?.channel)
       add(
         'thin-leads',
-        `The leads of ${thin.channel.name} drop ${millivoltsText(draft.amps * thin.channel.leadResistanceOhm)} at ${ampsText(draft.amps)}, which the charger takes for the module's. The taper takes longer for it.`,
+        `The leads of ${thin.channel.name} drop ${thin.channel.leadsMeasured === false ? 'perhaps ' : ''}${millivoltsText(draft.amps * leadOhmOf(thin.channel))} at ${ampsText(draft.amps)}, which the charger takes for the module's. The taper takes longer for it.${thin.channel.leadsMeasured === false ? ' Measure them to narrow the band.' : ''}`,
       );
     const unchecked = bulk.find((step) => step.channel !== null && step.channel.offsetSdVolts === null);
     if (unchecked?.channel)

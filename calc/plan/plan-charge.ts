@@ -8,8 +8,10 @@ import type {
   RuledOutWay,
   Way,
 } from '../plan-types';
+import { quantile } from '../statistics/quantile';
 import { isPossible, type Draft, type NotPossible } from './draft';
 import { groupByGroupWay } from './group-by-group-way';
+import { knownEndWay } from './known-end-way';
 import { paralleledWay } from './paralleled-way';
 import { planCautions } from './plan-cautions';
 import { planModel, type PlanModel } from './plan-model';
@@ -18,7 +20,8 @@ import { resistorWay } from './resistor-way';
 import { takesOneGroup } from './single-group';
 import { terminalsWay } from './terminals-way';
 import { toOption } from './to-option';
-import { durationText, limitText } from './words';
+import { countsFromEnd, isOnPlateau, withTargetVolts } from './target-soc';
+import { durationText, limitText, voltsText } from './words';
 
 const FINISHES: readonly Finish[] = ['over-and-settle', 'on-the-mark'];
 
@@ -35,7 +38,8 @@ const LONGEST_OFFERED_S = 36 * 3600;
  *
  * @throws CalcInputError for a curve that cannot be
  */
-export function planCharge(input: PlanInput): ChargePlan {
+export function planCharge(asked: PlanInput): ChargePlan {
+  const input = withTargetVolts(asked);
   const refusals = refuseCharge(input);
   if (refusals.length > 0) return refused(input, refusals);
   const model = planModel(input);
@@ -43,7 +47,10 @@ export function planCharge(input: PlanInput): ChargePlan {
     direction: model.direction,
     options: [],
     ruledOut: [],
-    alreadyWithin: model.startVolts.every((volts) => Math.abs(volts - model.targetVolts) <= model.toleranceVolts),
+    // On the plateau volts that agree are no state of charge that agrees.
+    alreadyWithin:
+      !countsFromEnd(model) &&
+      model.startVolts.every((volts) => Math.abs(volts - model.targetVolts) <= model.toleranceVolts),
     refusals: [],
     cautions: planCautions(model),
     groupAmpHours: groupAmpHours(model),
@@ -72,11 +79,15 @@ export function planCharge(input: PlanInput): ChargePlan {
       channelName: null,
       reason: 'No channel is in use here. Add a charger with its channels first.',
     });
-  forEachWay(model, take);
+  if (countsFromEnd(model)) fromEnds(model, take);
+  if (!countsFromEnd(model) || input.acceptWideBand === true) forEachWay(model, take);
   plan.options.sort((a, b) => a.totalS.p50 - b.totalS.p50 || a.handsOnS - b.handsOnS);
   leaveOutLong(plan, model);
   markSoonest(plan.options);
-  if (plan.options.length === 0 && ceilings > 0) plan.refusals.push(ceilingRefusal(model, plan.ruledOut));
+  if (input.acceptWideBand === false && !countsFromEnd(model) && isOnPlateau(model) && plan.options.length > 0)
+    refusePlateau(plan, model);
+  if (plan.options.length === 0 && plan.refusals.length === 0 && ceilings > 0)
+    plan.refusals.push(ceilingRefusal(model, plan.ruledOut));
   return plan;
 }
 
@@ -115,6 +126,35 @@ function forEachWay(model: PlanModel, take: Take): void {
     take('resistor', 'over-and-settle', { id: null, name: null }, { reason: "No resistor is on the workshop's list." });
   for (const resistor of resistors)
     take('resistor', 'over-and-settle', { id: null, name: resistor.name }, resistorWay(model, neighbour, resistor));
+}
+
+/** From full and from empty: the one may be sooner, the other nearer to the target and so surer. */
+function fromEnds(model: PlanModel, take: Take): void {
+  const ways = model.groups.length > 1 ? (['terminals', 'group-by-group'] as const) : (['terminals'] as const);
+  for (const channel of model.input.channels)
+    for (const way of ways)
+      for (const end of ['full', 'empty'] as const)
+        take(
+          way,
+          'over-and-settle',
+          { id: channel.channelId, name: channel.name },
+          knownEndWay(model, end, way, channel),
+        );
+}
+
+/** A bare voltage target on the plateau that nobody has accepted the band of. */
+function refusePlateau(plan: ChargePlan, model: PlanModel): void {
+  const { totalS } = plan.options[0]!;
+  const ends = model.samples.map((sample) => Math.min(1, Math.max(0, sample.targetSoc)));
+  const soc = { p10: quantile(ends, 0.1), p50: quantile(ends, 0.5), p90: quantile(ends, 0.9) };
+  const percent = (share: number): string => `${Math.round(share * 100)}\u00a0%`;
+  plan.refusals.push({
+    code: 'numbers',
+    group: null,
+    text: `The curve is flat at ${voltsText(model.targetVolts)}: that may be ${percent(soc.p10)} to ${percent(soc.p90)} of charge, and take ${durationText(totalS.p10)} to ${durationText(totalS.p90)}. Give the pack's state of charge and count from full or empty, or accept this band.`,
+    plateau: { totalS, soc },
+  });
+  plan.options = [];
 }
 
 function leaveOutLong(plan: ChargePlan, model: PlanModel): void {

@@ -1,5 +1,6 @@
 import { voltsAtSoc } from '../curve/ocv';
 import { socOf } from './soc-of';
+import { isGiven } from '../require';
 import { CHEMISTRIES } from '../parameters/chemistries';
 import { temperatureVolts } from '../parameters/temperature-coefficient';
 import { splitLongResistance, longResistance } from '../resistance/long-resistance';
@@ -16,7 +17,11 @@ const SETTLED_SHARE = 1 / 3;
 /** On the mark ends within this share of the tolerance. */
 const ON_THE_MARK_SHARE = 1 / 3;
 
-export const DEFAULT_SAMPLES = 64;
+/**
+ * Type 7 quantiles of n even points are drawn to the middle: of 64 the 10 and 90 % lines hold 78.7 % of a distribution, of 96
+ * 79.2 %.
+ */
+export const DEFAULT_SAMPLES = 96;
 
 /** What all ways of one plan start from: the nominal module at the clip-on, and its samples. */
 export interface PlanModel {
@@ -40,6 +45,8 @@ export interface PlanModel {
   markVolts: number;
   nominal: Sample;
   samples: Sample[];
+  /** What the samples were drawn about. */
+  basis: SampleBasis;
   spreads: Spreads;
 }
 
@@ -64,6 +71,7 @@ export function planModel(input: PlanInput): PlanModel {
     readVolts,
     lostSoc,
     targetVolts: target.volts,
+    targetSoc: isGiven(target.soc) ? { soc: target.soc, sd: target.socSd ?? DEFAULT_SPREADS.targetSoc } : null,
     capacityAh,
     longOhm,
     celsius,
@@ -78,13 +86,13 @@ export function planModel(input: PlanInput): PlanModel {
     groups: startVolts.map((restVolts, group) => ({
       capacityAh: capacityAh[group]!,
       ...splitLongResistance(longOhm[group]!),
-      polarisationTimeConstantS: chemistry.polarisationTimeConstantS,
+      polarisationTimeConstantS: module.polarisationTimeConstantS ?? chemistry.polarisationTimeConstantS,
       restVolts,
     })),
     startSoc,
     startVolts,
     targetVolts: target.volts,
-    targetSoc: socOf(curve, target.volts),
+    targetSoc: target.soc ?? socOf(curve, target.volts),
     toleranceVolts: target.toleranceVolts,
     direction: sum <= target.volts * startVolts.length ? 'charge' : 'discharge',
     celsius,
@@ -92,6 +100,7 @@ export function planModel(input: PlanInput): PlanModel {
     markVolts: target.toleranceVolts * ON_THE_MARK_SHARE,
     nominal: drawSamples(basis, 1, input.seed)[0]!,
     samples: drawSamples(basis, input.samples ?? DEFAULT_SAMPLES, input.seed),
+    basis,
     spreads,
   };
 }

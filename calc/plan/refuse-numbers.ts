@@ -1,4 +1,5 @@
 import type { PlanInput, Refusal } from '../plan-types';
+import { isGiven } from '../require';
 import { groupText, limitText, voltsText } from './words';
 
 /** Rest volts beyond this share over a group's limit are a slip of the pen, not an overcharged group. */
@@ -85,7 +86,15 @@ function capacityRefusals({ module, spare }: PlanInput): Refusal[] {
 
 function targetRefusals({ module, target }: PlanInput): Refusal[] {
   const found: Refusal[] = [];
-  const { volts, toleranceVolts: tolerance } = target;
+  const { volts, toleranceVolts: tolerance, soc } = target;
+  if (isGiven(soc) && !(soc >= 0 && soc <= 1))
+    found.push(
+      numbers(
+        soc > 1 && soc <= 100
+          ? `A state of charge of ${soc} looks like per cent. As a share it is ${soc / 100}. Give 0 to 1.`
+          : `A state of charge of ${soc} cannot be. Give 0 for empty to 1 for full.`,
+      ),
+    );
   if (!(volts > 0) || !Number.isFinite(volts))
     found.push(numbers('There is no target. Give the rest voltage per group.'));
   else if (volts / 1000 >= module.dischargeLimitVolts * 0.8 && volts / 1000 <= module.chargeLimitVolts * 1.02)

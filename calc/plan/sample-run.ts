@@ -25,6 +25,10 @@ export interface SampleRunInput {
   endAmps: number | null;
   /** In a taper that has been seen: the current with which every sample begins, in place of the set voltage; else null. */
   startAmps?: number | null;
+  /** Leads of the source in one sample, ohm, where they differ between samples. */
+  leadOhmIn?: (sample: Sample) => number;
+  /** How much wider this source's current is off than the spread says (ampsWidening). */
+  currentWidening?: number;
   /** The string between the clips where the current begins, in one sample. */
   stringIn: (sample: Sample) => { string: StringCharge; ohm: number };
 }
@@ -43,7 +47,7 @@ export function sampleRun(input: SampleRunInput): SampleRun {
     const before = known.get(sample);
     if (before) return before;
     const { string, ohm } = input.stringIn(sample);
-    const resistanceOhm = ohm + source.leadResistanceOhm + input.linkOhm;
+    const resistanceOhm = ohm + (input.leadOhmIn?.(sample) ?? source.leadResistanceOhm) + input.linkOhm;
     const asSet =
       source.setVolts === null
         ? null
@@ -52,7 +56,7 @@ export function sampleRun(input: SampleRunInput): SampleRun {
     const law: CurrentLaw = {
       openVolts: (ampHours) => stringVolts(string, ampHours),
       sign,
-      maxAmps: (source.maxAmps ?? Infinity) * sample.currentFactor,
+      maxAmps: (source.maxAmps ?? Infinity) * sample.currentFactor ** (input.currentWidening ?? 1),
       setVolts: startAmps === null ? asSet : stringVolts(string, 0) + sign * startAmps * resistanceOhm,
       maxWatts: source.maxWatts,
       resistanceOhm,

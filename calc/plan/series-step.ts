@@ -8,6 +8,8 @@ import type { PlanModel } from './plan-model';
 import type { Sample } from './samples';
 import { settleSource, type SourceSettings } from './source-settings';
 import { stringCharge, type StringCharge } from './string-charge';
+import { ampsWidening } from './charger-amps';
+import { leadOhmIn } from './leads';
 import { ampsText, groupText, limitText, millivoltsText } from './words';
 
 /** An end current below this cannot be read off any charger, A. */
@@ -17,6 +19,9 @@ const LEAST_END_AMPS = 1e-4;
  * A tenth of the ±50 mV that guides allow a 4.20 V cell.
  */
 const LIMIT_MARGIN_VOLTS = 0.005;
+
+/** Current of a pre-charge, as a multiple of a group's capacity per hour: 10 to 20 % of the fast current (charger chips). */
+export const PRECHARGE_RATE_C = 0.1;
 
 export interface SeriesStepInput {
   model: PlanModel;
@@ -37,6 +42,8 @@ export interface SeriesStepInput {
   first: boolean;
   /** What may stay short on the mark, V over the groups. */
   markVolts: number;
+  /** Most amps of this step, A; left out: as channel and module allow. */
+  mostAmps?: number;
   /** State of all groups before the step, nominal. */
   socBefore: number[];
   /** The string between the clips in one sample. */
@@ -56,6 +63,7 @@ export function seriesStep(input: SeriesStepInput): DraftStep | NotPossible {
     linkOhm: input.linkOhm,
     limitTimes: input.limitTimes,
     aimVolts,
+    ...prechargeLimit(input),
   });
   if ('reason' in settings) return settings;
   const { module } = model.input;
@@ -86,6 +94,20 @@ export function seriesStep(input: SeriesStepInput): DraftStep | NotPossible {
   const failed = failure(input, settings, result);
   if (failed) return failed;
   return toDraftStep(input, settings, result, sign);
+}
+
+/** Amps of a step: what was asked; else C/10 throughout where a group is still below its pre-charge volts. */
+function prechargeLimit({ mostAmps, direction, groups, model }: SeriesStepInput): { mostAmps?: number } {
+  const most = mostAmps ?? prechargeAmps(model, direction, groups);
+  return most === null ? {} : { mostAmps: most };
+}
+
+/** C/10 of the smallest group that is still below its pre-charge volts, A; null: none is. */
+export function prechargeAmps(model: PlanModel, direction: Direction, groups: readonly CellGroup[]): number | null {
+  const below = model.input.module.prechargeBelowVolts ?? null;
+  if (below === null || direction !== 'charge') return null;
+  const low = groups.filter((group) => group.restVolts < below - 1e-9);
+  return low.length === 0 ? null : PRECHARGE_RATE_C * Math.min(...low.map((group) => group.capacityAh));
 }
 
 function failure(input: SeriesStepInput, settings: SourceSettings, result: StepResult): NotPossible | null {
@@ -121,8 +143,11 @@ function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: S
   const { channel, aimVolts } = input;
   const ohm = source.leadResistanceOhm + input.linkOhm + input.stringIn(model.nominal).ohm;
   const markVolts = Math.max(input.markVolts, channel.minAmps * ohm);
+  const leads = leadOhmIn(channel);
   const run = sampleRun({
     model,
+    ...(leads === undefined ? {} : { leadOhmIn: leads }),
+    currentWidening: ampsWidening(channel, source.maxAmps, model.spreads.currentRelative),
     source,
     sign,
     count: groups.length,

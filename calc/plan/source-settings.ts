@@ -1,6 +1,8 @@
 import { setVoltageCap } from '../set-voltage-cap';
 import type { ChannelParameters } from '../plan-types';
 import type { CellGroup, Direction, Source } from '../types';
+import { channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
+import { leadOhmOf } from './leads';
 import { ampsText, limitText } from './words';
 import type { PlanModel } from './plan-model';
 
@@ -30,6 +32,8 @@ export interface Setting {
   limitTimes: number;
   /** Summed rest voltage aimed at, V. */
   aimVolts: number;
+  /** Most amps of this step besides, A; left out: no such limit. */
+  mostAmps?: number;
 }
 
 /**
@@ -45,9 +49,10 @@ export function settleSource(setting: Setting): SourceSettings | { reason: strin
   if ('reason' in amps) return amps;
   const { channel, direction, finish, aimVolts, groups } = setting;
   const sign = direction === 'charge' ? 1 : -1;
-  const leadOhm = channel.senses === 'module' ? 0 : channel.leadResistanceOhm;
+  const leadOhm = leadOhmOf(channel);
   const source: Source = {
-    maxAmps: amps.maxAmps,
+    // Over thermal pauses the current is its mean.
+    maxAmps: amps.maxAmps * (channel.duty ?? 1),
     setVolts: null,
     maxWatts: channel.maxWatts,
     leadResistanceOhm: leadOhm,
@@ -105,7 +110,17 @@ function allowedAmps(setting: Setting): { maxAmps: number; loadOhm: number | nul
   const { channel, direction, model, limitTimes, groups } = setting;
   const { module } = model.input;
   if (direction === 'charge')
-    return { maxAmps: Math.min(channel.maxAmps, module.maxChargeAmps * limitTimes), loadOhm: null };
+    return {
+      maxAmps: snappedAmps(
+        channel,
+        Math.min(
+          channelAmps(channel, channel.maxAmps, model.input.celsius),
+          module.maxChargeAmps * moduleCurrentShare(module, model.celsius) * limitTimes,
+          setting.mostAmps ?? Infinity,
+        ),
+      ),
+      loadOhm: null,
+    };
   if (!channel.canDischarge) return { reason: `${channel.name} cannot discharge.` };
   const limit = module.maxDischargeAmps * limitTimes;
   if (channel.loadOhm !== null) {
@@ -123,7 +138,7 @@ function allowedAmps(setting: Setting): { maxAmps: number; loadOhm: number | nul
       };
     return { maxAmps: Math.min(limit, channel.dischargeAmps ?? Infinity), loadOhm: channel.loadOhm };
   }
-  return { maxAmps: Math.min(channel.dischargeAmps ?? channel.maxAmps, limit), loadOhm: null };
+  return { maxAmps: snappedAmps(channel, Math.min(channel.dischargeAmps ?? channel.maxAmps, limit)), loadOhm: null };
 }
 
 /** The cap of over and settle, and of it the part that keeps every group inside its limit. */

@@ -2,6 +2,7 @@ import type { ChannelParameters, Finish } from '../plan-types';
 import { chooseAim } from './aim';
 import { isStep, type Draft, type NotPossible } from './draft';
 import type { PlanModel } from './plan-model';
+import { prechargeStep } from './precharge';
 import { groupsAt, sampleString, seriesStep } from './series-step';
 import type { ModuleState } from './single-group';
 import { trimSteps } from './trim';
@@ -25,6 +26,9 @@ export function terminalsWay(model: PlanModel, channel: ChannelParameters, finis
   // Where the groups already fill the tolerance, on the mark ends closer to its aim, so that the lowest stays inside.
   const mark =
     aim.kind === 'sum' ? Math.min(model.markVolts, Math.max(room, model.toleranceVolts / 10)) : model.markVolts;
+  const pre = prechargeStep(model, channel);
+  if (pre !== null && !isStep(pre)) return pre;
+  const before = pre?.socAfter ?? model.startSoc;
   const bulk = seriesStep({
     model,
     kind: 'bulk',
@@ -33,14 +37,15 @@ export function terminalsWay(model: PlanModel, channel: ChannelParameters, finis
     finish,
     direction,
     groupIndexes: all,
-    groups: groupsAt(model, all, model.startSoc),
+    groups: groupsAt(model, all, before, pre?.polarisationAfter),
     linkOhm: module.linkResistanceOhm,
     limitTimes: 1,
     aimVolts: aim.sumVolts,
     first: aim.kind === 'first',
     markVolts: mark * count,
-    socBefore: model.startSoc,
-    stringIn: sampleString(model, all, direction, () => 0),
+    ...(pre === null ? {} : { mostAmps: Infinity }),
+    socBefore: before,
+    stringIn: sampleString(model, all, direction, (sample) => pre?.ampHoursIn(sample) ?? 0),
   });
   if (!isStep(bulk)) return bulk;
 
@@ -48,11 +53,16 @@ export function terminalsWay(model: PlanModel, channel: ChannelParameters, finis
   const state: ModuleState = {
     soc: bulk.socAfter,
     polarisation: bulk.polarisationAfter,
-    movedIn: (sample) => sign * bulk.ampHoursIn(sample),
+    movedIn: (sample) => sign * (bulk.ampHoursIn(sample) + (pre?.ampHoursIn(sample) ?? 0)),
   };
   const trim =
     aim.outside.length > 0
-      ? trimSteps(model, finish, state, Math.max(model.input.clipOnAtS, channel.freeInS) + bulk.seconds)
+      ? trimSteps(
+          model,
+          finish,
+          state,
+          Math.max(model.input.clipOnAtS, channel.freeInS) + (pre?.seconds ?? 0) + bulk.seconds,
+        )
       : { steps: [], left: [] };
   const trimNames = [...new Set(trim.steps.map((step) => step.channel!.name))].join(' and ');
   const trimmed = trim.steps.map((step) => step.groupIndexes[0]!);
@@ -64,7 +74,7 @@ export function terminalsWay(model: PlanModel, channel: ChannelParameters, finis
     way: 'terminals',
     finish,
     direction,
-    steps: [bulk, ...trim.steps],
+    steps: [...(pre === null ? [] : [pre]), bulk, ...trim.steps],
     setVolts: bulk.setVolts,
     setVoltsCap: bulk.capVolts,
     amps: bulk.setAmps ?? Math.abs(bulk.trace[0]?.amps ?? bulk.endAmps),

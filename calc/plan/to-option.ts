@@ -7,6 +7,7 @@ import { dominantDoubt } from './doubt-shares';
 import type { Draft, DraftStep } from './draft';
 import { minimumRestS } from './minimum-rest';
 import type { PlanModel } from './plan-model';
+import { timeFactorOf, timeFactorText, withTimeFactor } from './time-factor';
 import { toTrace } from './to-trace';
 import { ampsText } from './words';
 
@@ -26,7 +27,9 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
   };
   clockInput.restS = Math.max(clockInput.restS, settleAfterEnd(steps, layOut(clockInput)));
   const clock = layOut(clockInput);
-  const sampled = model.samples.map((sample) => steps.map((step) => step.secondsIn(sample)));
+  const reckoned = model.samples.map((sample) => steps.map((step) => step.secondsIn(sample)));
+  const factor = timeFactorOf(input, steps);
+  const sampled = factor === null ? reckoned : withTimeFactor(reckoned, factor);
   const ready = sampled.map((seconds) => layOut({ ...clockInput, seconds }).readyS);
   const totalS: Band = { p10: quantile(ready, 0.1), p50: quantile(ready, 0.5), p90: quantile(ready, 0.9) };
   const doubt = dominantDoubt(model.samples, ready);
@@ -66,9 +69,20 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
     dominant: doubt.dominant,
     narrowsByS: doubt.narrowsByS,
     cautions: [],
+    ...knownEndOf(model, draft),
+    ...(factor === null ? {} : { timeFactor: factor, timeFactorText: timeFactorText(factor) }),
   };
   option.cautions = optionCautions(model, draft, option);
   return option;
+}
+
+function knownEndOf(model: PlanModel, { knownEnd, endSocIn }: Draft): Pick<PlanOption, 'knownEnd' | 'endSoc'> {
+  if (knownEnd === undefined || endSocIn === undefined) return {};
+  const ends = model.samples.map(endSocIn);
+  return {
+    knownEnd,
+    endSoc: { p10: quantile(ends, 0.1), p50: quantile(ends, 0.5), p90: quantile(ends, 0.9) },
+  };
 }
 
 /** What the over-voltages left in the groups want of rest after the last current, s. */
@@ -114,6 +128,7 @@ function toPlannedStep(model: PlanModel, step: DraftStep, clock: Clock, at: numb
     ampHours: step.ampHours,
     wattHours: step.wattHours,
     endAmps: step.endAmps,
+    ...(step.precharge ? { precharge: true as const } : {}),
     voltageLimitAtS: step.voltageLimitAtS === null ? null : clock.startS[at]! + step.voltageLimitAtS,
     restVoltsAfter: step.socAfter.map((soc) => voltsAtSoc(model.curve, soc)),
   };
@@ -123,10 +138,11 @@ function toPlannedStep(model: PlanModel, step: DraftStep, clock: Clock, at: numb
 const moduleAmpHours = (steps: DraftStep[]): number =>
   steps.reduce((sum, step) => sum + (step.kind === 'pre-level' ? 0 : step.ampHours), 0);
 
-function optionId({ way, finish, steps }: Draft): string {
+function optionId({ way, finish, steps, knownEnd }: Draft): string {
   const bulk = steps.filter((step) => step.kind === 'bulk');
   const channels = [...new Set(bulk.map((step) => step.channel?.channelId ?? step.resistorId ?? ''))];
-  return `${way}/${finish}/${channels.length === 1 ? channels[0] : 'several'}`;
+  const from = knownEnd === undefined ? '' : `/from-${knownEnd}`;
+  return `${way}/${finish}/${channels.length === 1 ? channels[0] : 'several'}${from}`;
 }
 
 function channelText(model: PlanModel, draft: Draft): string {

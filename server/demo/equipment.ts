@@ -16,7 +16,20 @@ export const handMeterId = 'demo-meter-hand-1';
 
 type TypeColumns = Omit<ModuleType, 'id' | 'workshopId' | 'rev' | 'createdAt'>;
 
+const nothingMore = {
+  curveId: null,
+  ownCurve: null,
+  pulseShortS: null,
+  pulseShortMilliohm: null,
+  pulseLongerS: null,
+  pulseLongerMilliohm: null,
+  coldCurrentPercent: null,
+  warmCurrentPercent: null,
+  prechargeBelowVolts: null,
+} as const;
+
 const lithium = {
+  ...nothingMore,
   dischargeLimitVolts: 3,
   floorVolts: 2.5,
   minChargeCelsius: 10,
@@ -242,5 +255,10 @@ const channelRow = (spec: ChannelSpec): Channel => ({
   canDischarge: spec.dischargeAmps !== undefined,
   dischargeAmps: spec.dischargeAmps ?? null,
   loadOhm: null,
+  displayStepAmps: null,
+  leadsMeasured: null,
+  deratingAboveCelsius: null,
+  deratingPercent: null,
+  dutyPercent: null,
   retired: false,
 });

@@ -185,6 +185,7 @@ export function pastReadings(past: PastCharge, lookIns: readonly LookIn[], noise
         groupVolts: null,
         meterId: `demo-meter-${past.wish.channel}`,
         personId: personId(past),
+        takenAt: 'supply',
         source: 'typed',
         replacesId: null,
         replacedById: null,
@@ -230,6 +231,7 @@ export function pastRestCheck(past: PastCharge): RestCheck | null {
     meterId: handMeterId,
     personId: personId(past),
     verdict: judgeCheck(past.checkVolts, target, module, spare.capacityAh),
+    early: false,
     createdAt: past.checkedAt,
   };
 }
@@ -244,6 +246,7 @@ export const pastSpare = (last: PastCharge, label: string): Spare => ({
   capacityAh: last.asked.capacityAh,
   healthPercent: null,
   capacitySource: 'measured',
+  capacitySdAh: null,
   condition: 'sound',
   quarantineReason: null,
   quarantinedAt: null,

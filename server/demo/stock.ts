@@ -122,6 +122,7 @@ const spareRow = (one: SpareSpec, now: number, setUpAt: number): Spare => ({
   capacityAh: one.capacityAh,
   healthPercent: null,
   capacitySource: one.source,
+  capacitySdAh: null,
   condition: (one.condition ?? 'sound') satisfies SpareInput['condition'],
   quarantineReason: one.quarantine?.reason ?? null,
   quarantinedAt: one.quarantine ? now - one.quarantine.daysAgo * DAY : null,

@@ -18,6 +18,7 @@ import { RestCheck } from './rest-check';
 import { RunStretch } from './run-stretch';
 import { Session } from './session';
 import { Spare } from './spare';
+import { SpareCapacity } from './spare-capacity';
 import { SpareReading } from './spare-reading';
 import { Wall } from './wall';
 import { WallCode } from './wall-code';
@@ -36,6 +37,7 @@ export const entities = [
   Spare,
   SpareReading,
   Charge,
+  SpareCapacity,
   ChannelHold,
   RunStretch,
   ChargeReading,

@@ -1,5 +1,5 @@
 import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
-import { flagColumn, idColumn, optionalRealColumn, realColumn, textColumn } from './columns';
+import { flagColumn, idColumn, optionalFlagColumn, optionalRealColumn, realColumn, textColumn } from './columns';
 import { Charger } from './charger';
 import { Workshop } from './workshop';
 
@@ -57,6 +57,21 @@ export class Channel {
 
   @Column(optionalRealColumn('load_ohm'))
   loadOhm!: number | null;
+
+  @Column(optionalRealColumn('display_step_amps'))
+  displayStepAmps!: number | null;
+
+  @Column(optionalFlagColumn('leads_measured'))
+  leadsMeasured!: boolean | null;
+
+  @Column(optionalRealColumn('derating_above_celsius'))
+  deratingAboveCelsius!: number | null;
+
+  @Column(optionalRealColumn('derating_percent'))
+  deratingPercent!: number | null;
+
+  @Column(optionalRealColumn('duty_percent'))
+  dutyPercent!: number | null;
 
   @Column(flagColumn('retired'))
   retired!: boolean;

@@ -1,5 +1,6 @@
 /** Shapes of the JSON columns of a charge. */
 import type {
+  Band,
   ChannelParameters,
   ModuleParameters,
   NeighbourState,
@@ -33,4 +34,18 @@ export interface FrozenInputs {
 export interface StoredReckoning {
   at: number;
   reckoning: Reckoning;
+  /** What the group readings of the rest say; null or left out: nothing. */
+  rest?: StoredRest | null;
+}
+
+/** Forecast of a rest; seconds as in the reckoning. */
+export interface StoredRest {
+  /** Of each group, V. */
+  settledVolts: Band[];
+  /** That what is still to come is within a tenth of the tolerance in every group, 0…1. */
+  chance: number;
+  restedEnough: boolean;
+  /** Since when, or when that is expected; null: not within a day. */
+  enoughAtS: number | null;
+  readings: number;
 }

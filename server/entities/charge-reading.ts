@@ -43,6 +43,10 @@ export class ChargeReading {
   @Column(optionalJsonColumn('group_volts'))
   groupVolts!: number[] | null;
 
+  /** Where the volts between the clips were read; null: nobody has said. */
+  @Column(optionalTextColumn('taken_at_place'))
+  takenAt!: 'supply' | 'module' | null;
+
   @ForeignKey(() => Meter, { name: 'fk_charge_reading_meter' })
   @Column(optionalIdColumn('meter_id'))
   meterId!: string | null;

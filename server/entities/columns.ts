@@ -35,3 +35,4 @@ export const realColumn = (name: string): ColumnOptions => ({ type: 'double prec
 export const optionalRealColumn = (name: string): ColumnOptions => ({ type: 'double precision', name, nullable: true });
 export const wholeColumn = (name: string): ColumnOptions => ({ type: 'integer', name });
 export const flagColumn = (name: string): ColumnOptions => ({ type: 'boolean', name });
+export const optionalFlagColumn = (name: string): ColumnOptions => ({ type: 'boolean', name, nullable: true });

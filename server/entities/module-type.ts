@@ -1,8 +1,10 @@
 import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
+import type { OcvTable } from '@/calc/types';
 import type { ChemistryId, ResistanceKind } from '@/calc/plan-types';
 import {
   idColumn,
   instantColumn,
+  optionalJsonColumn,
   optionalRealColumn,
   optionalTextColumn,
   realColumn,
@@ -75,6 +77,34 @@ export class ModuleType {
 
   @Column(optionalTextColumn('note'))
   note!: string | null;
+
+  @Column(optionalTextColumn('curve_id'))
+  curveId!: string | null;
+
+  /** The workshop's own curve. */
+  @Column(optionalJsonColumn('own_curve'))
+  ownCurve!: OcvTable | null;
+
+  @Column(optionalRealColumn('pulse_short_s'))
+  pulseShortS!: number | null;
+
+  @Column(optionalRealColumn('pulse_short_milliohm'))
+  pulseShortMilliohm!: number | null;
+
+  @Column(optionalRealColumn('pulse_longer_s'))
+  pulseLongerS!: number | null;
+
+  @Column(optionalRealColumn('pulse_longer_milliohm'))
+  pulseLongerMilliohm!: number | null;
+
+  @Column(optionalRealColumn('cold_current_percent'))
+  coldCurrentPercent!: number | null;
+
+  @Column(optionalRealColumn('warm_current_percent'))
+  warmCurrentPercent!: number | null;
+
+  @Column(optionalRealColumn('precharge_below_volts'))
+  prechargeBelowVolts!: number | null;
 
   @Column(wholeColumn('rev'))
   rev!: number;

@@ -1,6 +1,13 @@
 import { Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import type { CheckVerdict } from '@/calc/plan-types';
-import { idColumn, instantColumn, jsonColumn, optionalIdColumn, optionalRealColumn } from './columns';
+import {
+  idColumn,
+  instantColumn,
+  jsonColumn,
+  optionalFlagColumn,
+  optionalIdColumn,
+  optionalRealColumn,
+} from './columns';
 import { Charge } from './charge';
 import { Meter } from './meter';
 import { Person } from './person';
@@ -40,6 +47,10 @@ export class RestCheck {
 
   @Column(jsonColumn('verdict'))
   verdict!: CheckVerdict;
+
+  /** It came before the minimum rest was over; null: nobody noted it. */
+  @Column(optionalFlagColumn('early'))
+  early!: boolean | null;
 
   @Column(instantColumn('created_at'))
   createdAt!: number;

@@ -46,6 +46,10 @@ export class Spare {
   @Column(textColumn('capacity_source'))
   capacitySource!: NumberSource;
 
+  /** Standard deviation of the capacity where a charge has told it, Ah; null: as its source is good for. */
+  @Column(optionalRealColumn('capacity_sd_ah'))
+  capacitySdAh!: number | null;
+
   @Column(textColumn('condition'))
   condition!: SpareInput['condition'];
 

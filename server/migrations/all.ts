@@ -2,5 +2,17 @@
 import { Initial1764600000000 } from './1764600000000-initial';
 import { NeighbourSpare1764700000000 } from './1764700000000-neighbour-spare';
 import { AlertPassed1764800000000 } from './1764800000000-alert-passed';
+import { EarlyCheck1764900000000 } from './1764900000000-early-check';
+import { SpareCapacity1765000000000 } from './1765000000000-spare-capacity';
+import { Behaviours1765100000000 } from './1765100000000-behaviours';
+import { ReadingPlace1765200000000 } from './1765200000000-reading-place';
 
-export const migrations = [Initial1764600000000, NeighbourSpare1764700000000, AlertPassed1764800000000];
+export const migrations = [
+  Initial1764600000000,
+  NeighbourSpare1764700000000,
+  AlertPassed1764800000000,
+  EarlyCheck1764900000000,
+  SpareCapacity1765000000000,
+  Behaviours1765100000000,
+  ReadingPlace1765200000000,
+];

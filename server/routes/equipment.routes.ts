@@ -1,4 +1,10 @@
-import { chargerSchema, meterSchema, moduleTypeSchema, resistorSchema } from '@/shared/contract/equipment';
+import {
+  chargerSchema,
+  meterSchema,
+  moduleTypeSchema,
+  ownCurveSchema,
+  resistorSchema,
+} from '@/shared/contract/equipment';
 import { addCharger, changeCharger, charger, chargers, retireCharger } from '../services/chargers.service';
 import { addMeter, changeMeter, meters, removeMeter } from '../services/meters.service';
 import {
@@ -8,6 +14,7 @@ import {
   moduleTypes,
   removeModuleType,
 } from '../services/module-types.service';
+import { removeOwnCurve, saveOwnCurve } from '../services/own-curves.service';
 import { addResistor, changeResistor, removeResistor, resistors } from '../services/resistors.service';
 import type { Policy, RoutesModule } from './define-route';
 
@@ -49,6 +56,21 @@ export const equipmentRoutes: RoutesModule = (route) => {
     policy: write,
     ifMatch: true,
     handle: ({ deps, member, params, rev, now }) => removeModuleType(deps, member, params.id!, rev, now),
+  });
+  route({
+    method: 'put',
+    path: '/module-types/:id/curve',
+    policy: write,
+    body: ownCurveSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) => saveOwnCurve(deps, member, params.id!, rev, body, now),
+  });
+  route({
+    method: 'delete',
+    path: '/module-types/:id/curve',
+    policy: write,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) => removeOwnCurve(deps, member, params.id!, rev, now),
   });
 
   route({

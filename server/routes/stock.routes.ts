@@ -1,10 +1,12 @@
 import {
+  capacityAnswerSchema,
   newSpareSchema,
   quarantineSchema,
   spareReadingSchema,
   spareSchema,
   sparesQuerySchema,
 } from '@/shared/contract/spare';
+import { answerCapacity } from '../services/capacity-answers.service';
 import { quarantineSpare, releaseSpare } from '../services/quarantine.service';
 import { addSpareReading } from '../services/spare-readings.service';
 import { addSpare, changeSpare, spare, spareHistory, spares } from '../services/spares.service';
@@ -65,6 +67,15 @@ export const stockRoutes: RoutesModule = (route) => {
     policy: { kind: 'capability', capability: 'spare:release' },
     ifMatch: true,
     handle: ({ deps, member, params, rev, now }) => releaseSpare(deps, member, params.id!, rev, now),
+  });
+  route({
+    method: 'post',
+    path: '/spares/:id/capacities/:capacityId',
+    policy: write,
+    body: capacityAnswerSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) =>
+      answerCapacity(deps, member, { spareId: params.id!, capacityId: params.capacityId! }, rev, body, now),
   });
   route({
     method: 'get',

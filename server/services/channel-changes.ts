@@ -31,8 +31,11 @@ export function channelChanges(
     if (taken) throw takenElsewhere(index, input.name, taken.retired);
     const present = presentChannel(own, input, index);
     const row =
-      present ?? Object.assign(new Channel(), { id: newId(), workshopId: charger.workshopId, chargerId: charger.id });
-    const { id: _id, ...columns } = input;
+      present ??
+      Object.assign(new Channel(), none, { id: newId(), workshopId: charger.workshopId, chargerId: charger.id });
+    const { id: _id, ...typedColumns } = input;
+    // What was left out stays as it is.
+    const columns = Object.fromEntries(Object.entries(typedColumns).filter(([, value]) => value !== undefined));
     return Object.assign(row, columns, { retired: false });
   });
   const keptIds = new Set(kept.map((channel) => channel.id));
@@ -43,6 +46,15 @@ export function channelChanges(
     retiredIds: retired.map((channel) => channel.id),
   };
 }
+
+/** What may be left out of the form, as a new channel has it. */
+const none = {
+  displayStepAmps: null,
+  leadsMeasured: null,
+  deratingAboveCelsius: null,
+  deratingPercent: null,
+  dutyPercent: null,
+} satisfies Partial<Channel>;
 
 function presentChannel(own: readonly Channel[], input: ChannelInput, index: number): Channel | undefined {
   if (input.id === undefined) return own.find((channel) => channel.retired && channel.name === input.name);

@@ -1,4 +1,5 @@
 /** What each alert says: what was seen, then what to check first (look: §1, §8). */
+import type { OddSeen } from '@/calc/live-types';
 import type { ChargeFile } from './charge-file';
 import { isChecked, promisedAt } from './charge-due';
 import { restedS } from './charge-progress';
@@ -7,6 +8,7 @@ import { channelNamesOf, handText, stepsOfSwap, titleAtChannel } from './charge-
 import {
   ampHoursText,
   ampsText,
+  celsiusText,
   cellText,
   clipText,
   clockText,
@@ -62,10 +64,14 @@ export function checkDueText(file: ChargeFile): AlertText {
       : ` Nobody has said that ${channelsOfLast(file) || 'the resistor'} is off: look at that before you measure.`;
   return {
     title: titleAtChannel(file, lastStep(file)),
-    seen: `Rested ${durationText(restedS(file))}.`,
+    seen: `Rested ${durationText(restedS(file))}.${settledText(file)}`,
     checkFirst: `Each group with the meter, three decimals, against ${cellText(charge.frozen.target.volts)}.${unsaid}`,
   };
 }
+
+/** Why a check is due before the workshop's minimum rest is over. */
+const settledText = (file: ChargeFile): string =>
+  restedS(file) < file.charge.frozen.workshop.minRestS - 1 ? ' Its readings say that it has settled.' : '';
 
 export function stepSwapText(file: ChargeFile, wait: SwapWait): AlertText {
   const { charge } = file;
@@ -106,6 +112,50 @@ export function lookInText(file: ChargeFile): AlertText {
     seen: `A look-in is due. ${stands}.`,
     checkFirst: `Warmth, smell${joined} and the clips, then log what the charger shows.`,
   };
+}
+
+/** A reading that nothing explains: what was seen, what was expected, what to look at first. */
+export function oddText(file: ChargeFile, odd: OddSeen): AlertText {
+  const valueOf = (value: number): string =>
+    odd.quantity === 'amps'
+      ? ampsText(Math.abs(value))
+      : odd.quantity === 'celsius'
+        ? celsiusText(value)
+        : odd.quantity === 'group-volts'
+          ? cellText(value)
+          : clipText(value);
+  const names = listText(channelNamesOf(file, presentStep(file)));
+  return {
+    title: titleAtChannel(file, presentStep(file)),
+    seen: `${oddSeen(odd, valueOf(odd.seen))} ${valueOf(odd.expected)} was expected.`,
+    checkFirst: oddCheck(odd, names === '' ? 'the resistor' : names),
+  };
+}
+
+function oddSeen({ kind, quantity, group }: OddSeen, seen: string): string {
+  if (kind === 'no-current') return 'No current flows.';
+  if (kind === 'stuck-current') return `The current has stood at ${seen}.`;
+  if (kind === 'too-warm') return `It has warmed to ${seen}.`;
+  if (group !== null) return `Group ${group + 1} reads ${seen}.`;
+  return quantity === 'terminal-volts' ? `The clips read ${seen}.` : `${seen} was read.`;
+}
+
+function oddCheck({ kind, group }: OddSeen, channel: string): string {
+  const place = group === null ? 'the groups' : `group ${group + 1}`;
+  switch (kind) {
+    case 'voltage-jump':
+      return 'The clips and how they hold, then the leads.';
+    case 'no-current':
+      return `Whether ${channel} is on, then the clips, then its set voltage.`;
+    case 'stuck-current':
+      return `Warmth at ${place}, then what ${channel} is set to, then the clips.`;
+    case 'group-ahead':
+      return `Warmth at ${place}, then the meter tip on its tab, then its busbar.`;
+    case 'too-warm':
+      return 'Where it is warmest, then the clips there. Hold the charge where it rises on.';
+    case 'unexplained':
+      return 'The reading itself, then the clips, then the set voltage.';
+  }
 }
 
 /** The group that is behind by more than the workshop lets pass; null: none is. */

@@ -11,6 +11,7 @@ import {
   chargeDoneText,
   checkDueText,
   lookInText,
+  oddText,
   overdueText,
   stepSwapText,
   type AlertText,
@@ -18,7 +19,8 @@ import {
 import { isChecked, overdueSince, TOLD_AGAIN_MS } from './charge-due';
 import type { ChargeFile } from './charge-file';
 import { dueLookIn } from './charge-look-ins';
-import { swapWait } from './charge-stages';
+import { instantOf } from './charge-clock';
+import { isUnderWay, swapWait } from './charge-stages';
 import { durationText } from './charge-words';
 import { newId } from './ids';
 
@@ -63,6 +65,16 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
   const lookIn = dueLookIn(file, now);
   if (lookIn !== null)
     wanted.push({ kind: 'look-in-due', level: 'tell', since: lookIn.dueAt, key: lookIn.id, text: lookInText(file) });
+  const odd = isUnderWay(charge.stage) ? (charge.reckoning?.reckoning.odd ?? null) : null;
+  if (odd !== null)
+    // One kind is told once a charge: what comes and goes with every reading would ring with every reading.
+    wanted.push({
+      kind: 'odd-reading',
+      level: 'alarm',
+      since: instantOf(charge, odd.sinceS),
+      key: odd.kind,
+      text: oddText(file, odd),
+    });
   const late = overdueSince(file, now);
   if (late !== null) wanted.push({ kind: 'overdue', level: 'alarm', since: late, text: overdueText(file, now) });
   return wanted;

@@ -4,8 +4,10 @@ import type {
   ChargeDto,
   ChargeEventDto,
   InstantBand,
+  OddDto,
   ReadingDto,
   RestCheckDto,
+  RestDto,
 } from '@/shared/contract/charge';
 import { can } from '@/shared/contract/roles';
 import type { Config } from '../config';
@@ -171,6 +173,7 @@ export async function chargeDto(
     shelfPlace: file.spare.shelfPlace,
     meterId: charge.targetMeterId,
     targetCelsius: charge.targetCelsius,
+    targetSoc: typeof charge.frozen.target.soc === 'number' ? charge.frozen.target.soc * 100 : null,
     targetTypedVolts: charge.targetVolts,
     topUpOf: link(topUpOf?.get(charge.topUpOf ?? '') ?? null),
     wentOnAs: link(await findTopUpOf(manager, charge.workshopId, charge.id)),
@@ -186,6 +189,9 @@ export async function chargeDto(
     readings: byTime(file.readings).map((reading) => readingDto(file, reading, member)),
     restChecks: file.restChecks.map((check) => restCheckDto(file, check)),
     events: events.map((event) => eventDto(file, event)),
+    rest: restDto(fresh),
+    odd: oddDto(fresh),
+    learned: reckoning?.learned ?? { capacityAh: null, longOhm: null, leadOhm: null },
     dominant: reckoning?.dominant ?? charge.option.dominant,
     createdAt: toInstant(charge.createdAt),
     labelUrl: `${(config.publicUrl ?? '').replace(/\/+$/, '')}/charges/${charge.id}`,
@@ -209,6 +215,23 @@ function freshened(file: ChargeFile, now: number): ChargeFile {
   return fresh;
 }
 
+/** The forecast while it rests; over and checked, it is history. */
+function restDto({ charge }: ChargeFile): RestDto | null {
+  const rest = charge.reckoning?.rest ?? null;
+  if (rest === null || (charge.stage !== 'resting' && charge.stage !== 'check-due')) return null;
+  const { enoughAtS, ...said } = rest;
+  return { ...said, enoughAt: enoughAtS === null ? null : toInstant(instantOf(charge, enoughAtS)) };
+}
+
+/** Only of a charge that goes on: of one that is over there is nothing to check any more. */
+function oddDto({ charge }: ChargeFile): OddDto | null {
+  const odd = charge.reckoning?.reckoning.odd ?? null;
+  if (odd === null || !isUnderWay(charge.stage)) return null;
+  const { sinceS, ...seen } = odd;
+  // The instant of a reading, to the millisecond: rounded up as what is to come is, it would lie after that reading.
+  return { ...seen, since: toInstant((charge.startedAt ?? 0) + Math.round(sinceS * 1000)) };
+}
+
 function expectedOf({ charge }: ChargeFile): ChargeDto['expected'] {
   const expected = charge.reckoning?.reckoning.expected ?? null;
   return expected === null
@@ -230,6 +253,7 @@ export const readingDto = (file: ChargeFile, reading: ChargeReading, member: Mem
   celsius: reading.celsius,
   groupVolts: reading.groupVolts,
   meterId: reading.meterId,
+  takenAt: reading.takenAt,
   by: personRef(file.people, reading.personId)!,
   source: reading.source,
   replacedBy: reading.replacedById,
@@ -250,6 +274,7 @@ const restCheckDto = (file: ChargeFile, check: RestCheck): RestCheckDto => ({
   by: personRef(file.people, check.personId)!,
   groupVolts: check.groupVolts,
   celsius: check.celsius,
+  early: check.early === true,
   verdict: check.verdict,
 });
 

@@ -1,7 +1,8 @@
 import type { Stage } from '@/shared/contract/charge';
 import type { ChargeFile } from './charge-file';
-import { chargeNow, instantOf } from './charge-clock';
+import { chargeNow, instantOf, secondsOf } from './charge-clock';
 import { reckonAt } from './charge-reckoning';
+import { restOf, withRestEnd } from './charge-rest';
 import { isUnderWay, stageFrom, swapWait } from './charge-stages';
 import { channelNamesOf, handText } from './charge-steps';
 import { ampHoursText, ampsText, clockText, durationText, listText } from './charge-words';
@@ -21,8 +22,11 @@ const plain = (stage: Stage): Stage => (stage === 'discharging' ? 'charging' : s
 export function reckonTo(file: ChargeFile, now: number): void {
   const { charge } = file;
   const at = chargeNow(charge, now);
-  const reckoning = reckonAt(file, at);
-  charge.reckoning = { at, reckoning };
+  const reckoned = reckonAt(file, at);
+  const nowS = Math.max(0, secondsOf(charge, at));
+  const rest = restOf(file, reckoned, nowS);
+  const reckoning = withRestEnd(reckoned, rest?.enoughAtS ?? null, nowS);
+  charge.reckoning = { at, reckoning, rest };
   charge.taperAt = reckoning.taperAtS === null ? null : instantOf(charge, reckoning.taperAtS);
   if (!charge.currentOffSaid) charge.currentEndAt = instantOf(charge, reckoning.currentEndS);
   charge.checkDueAt = instantOf(charge, reckoning.restEndS);

@@ -22,7 +22,7 @@ const UNDER_CURRENT_OVER_LIMIT_VOLTS = 0.5;
 /** A supply shows a little more than it is rated for. */
 const SUPPLY_SLACK = 1.05;
 
-type ReadingValues = Pick<ChargeReading, 'terminalVolts' | 'amps' | 'celsius' | 'groupVolts' | 'meterId'>;
+type ReadingValues = Pick<ChargeReading, 'terminalVolts' | 'amps' | 'celsius' | 'groupVolts' | 'meterId' | 'takenAt'>;
 
 /**
  * Logs a reading; late ones are sorted in by their time. Whoever reads has looked in.
@@ -81,7 +81,7 @@ export function correctReading(
     const given = input.at === undefined ? new Date(old.at).toISOString() : input.at;
     const at = actInstant(file, given, now, { at: charge.startedAt ?? now, name: 'the start' });
     const reading = {
-      ...readingRow(write, at, plausible(write, input)),
+      ...readingRow(write, at, plausible(write, { ...input, takenAt: input.takenAt ?? old.takenAt })),
       replacesId: old.id,
       reason: input.reason ?? null,
     };
@@ -126,7 +126,18 @@ function plausible(write: ChargeWrite, input: ReadingInput): ReadingValues {
     celsius: input.celsius,
     groupVolts: input.groupVolts ?? null,
     meterId: input.meterId ?? null,
+    takenAt: takenAt(write, input),
   };
+}
+
+/** Where the volts were read: as it was said; a charger's own display shows what the charger senses. */
+function takenAt(write: ChargeWrite, input: ReadingInput): ChargeReading['takenAt'] {
+  if (input.terminalVolts === null) return null;
+  if (input.takenAt) return input.takenAt;
+  if (input.meterId) return null;
+  const channelId = presentStep(write)?.channelIds[0];
+  const channel = write.file.charge.frozen.channels.find((one) => one.channelId === channelId);
+  return channel === undefined ? null : channel.senses === 'module' ? 'module' : 'supply';
 }
 
 const presentStep = ({ file }: ChargeWrite) =>

@@ -44,6 +44,8 @@ const liveReading = (file: ChargeFile, reading: ChargeReading): LiveReading => (
   terminalVolts: reading.terminalVolts,
   amps: reading.amps,
   celsius: reading.celsius,
+  ...(reading.takenAt === null ? {} : { takenAt: reading.takenAt }),
+  meterId: reading.meterId,
   groupVolts:
     reading.groupVolts === null
       ? null

@@ -13,11 +13,13 @@ import { updateSpare } from '../repositories/charge-stock.repository';
 import { insertSpareReading } from '../repositories/spares.repository';
 import { announceStock } from './announce';
 import { actInstant } from './charge-instants';
+import type { ChargeFile } from './charge-file';
 import { isOpen } from './charge-stages';
 import { wrongStage } from './charge-stage-conflict';
 import { markVisit } from './charge-visit';
 import { ampHoursText, bare, durationText, groupsText, millivoltsText, upperFirst } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
+import { keepFoundCapacity } from './found-capacity';
 import { newId } from './ids';
 import { correctedVolts } from './meter-trust';
 
@@ -25,7 +27,7 @@ import { correctedVolts } from './meter-trust';
  * Judges the group voltages after the rest. In: ready. Out: the check stays due, with what each group needs.
  *
  * The known offset of the meter is taken off before the verdict. The voltages are kept with the spare too: a top-up is
- * planned from them. A check before the rest is over counts, and the log says that it was early.
+ * planned from them. A check before the rest is over counts; it is marked early, and the log says so.
  * @throws DomainError 409 where nothing rests, 400 with the sentence per voltage that cannot be
  */
 export async function checkAfterRest(
@@ -64,6 +66,7 @@ export async function checkAfterRest(
       at,
       ...row,
       verdict,
+      early: isEarly(file, at),
       createdAt: now,
     };
     await insertRestCheck(manager, check);
@@ -78,7 +81,8 @@ export async function checkAfterRest(
       createdAt: now,
     });
     await markVisit(write, at, null);
-    const early = charge.checkDueAt !== null && at < charge.checkDueAt ? earlyText(charge.checkDueAt - at) : '';
+    const early = earlyText(file, at);
+    await keepFoundCapacity(write, check);
     charge.checkedAt = at;
     if (verdict.within) {
       charge.stage = 'ready';
@@ -90,8 +94,21 @@ export async function checkAfterRest(
   return dto;
 }
 
-const earlyText = (beforeMs: number): string =>
-  ` Checked early, ${durationText(beforeMs / 1000)} before the rest was over.`;
+/** End of the workshop's minimum rest, epoch ms. */
+const minimumRestEnd = ({ charge }: ChargeFile): number =>
+  (charge.currentEndAt ?? 0) + charge.frozen.workshop.minRestS * 1000;
+
+const isEarly = (file: ChargeFile, at: number): boolean =>
+  at < Math.max(file.charge.checkDueAt ?? 0, minimumRestEnd(file));
+
+function earlyText(file: ChargeFile, at: number): string {
+  const { checkDueAt } = file.charge;
+  if (!isEarly(file, at)) return '';
+  if (checkDueAt !== null && at < checkDueAt)
+    return ` Checked early, ${durationText((checkDueAt - at) / 1000)} before the rest was over.`;
+  const before = durationText((minimumRestEnd(file) - at) / 1000);
+  return ` Checked early, ${before} before the minimum rest was over: the readings say that it has settled.`;
+}
 
 function verdictText(verdict: CheckVerdict): string {
   const worst = verdict.groups[verdict.worstGroup]!;

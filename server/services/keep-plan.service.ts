@@ -160,7 +160,7 @@ function chargeRow(
     direction: option.direction,
     way: option.way,
     finish: option.finish,
-    targetVolts: request.targetVolts,
+    targetVolts: planned.typedVolts,
     toleranceVolts: frozen.target.toleranceVolts,
     targetMeterId: request.meterId,
     targetCelsius: request.packCelsius,

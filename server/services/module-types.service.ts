@@ -1,4 +1,5 @@
 import type { EntityManager } from 'typeorm';
+import { CalcInputError, checkOwnCurve, publishedCurves } from '@/calc/index';
 import type { ModuleTypeDto, ModuleTypeInput } from '@/shared/contract/equipment';
 import type { Deps, Member } from '../deps';
 import { ModuleType } from '../entities/module-type';
@@ -15,6 +16,7 @@ import { announceEquipment } from './announce';
 import { newId } from './ids';
 import { moduleTypeDto } from './module-types-dto';
 import { nameTaken } from './name-taken';
+import { pulseSeconds } from './plan-parameters';
 import { inTransaction } from './unit-of-work';
 
 export async function moduleTypes(deps: Deps, member: Member): Promise<ModuleTypeDto[]> {
@@ -35,7 +37,13 @@ export async function addModuleType(
   const { workshopId } = member;
   const dto = await inTransaction(deps, async (manager) => {
     await refuseTakenName(manager, workshopId, input.name, null);
-    const type = Object.assign(new ModuleType(), input, { id: newId(), workshopId, rev: 1, createdAt: now });
+    const type = Object.assign(new ModuleType(), none, given(input), {
+      id: newId(),
+      workshopId,
+      rev: 1,
+      createdAt: now,
+    });
+    refuseMisfits(type);
     await saveModuleType(manager, type);
     return dtoOf(manager, workshopId, type.id);
   });
@@ -65,7 +73,9 @@ export async function changeModuleType(
       throw invalid({
         groupsInSeries: `The readings of this type’s spares have ${type.groupsInSeries} groups. Add a new type for another number.`,
       });
-    await saveModuleType(manager, Object.assign(type, input, { rev: rev + 1 }));
+    const changed = Object.assign(type, given(input), { rev: rev + 1 });
+    refuseMisfits(changed);
+    await saveModuleType(manager, changed);
     return dtoOf(manager, workshopId, id);
   });
   announceEquipment(deps, member, now);
@@ -105,6 +115,45 @@ async function known(manager: EntityManager, workshopId: string, id: string): Pr
 async function dtoOf(manager: EntityManager, workshopId: string, id: string): Promise<ModuleTypeDto> {
   const type = await known(manager, workshopId, id);
   return moduleTypeDto(type, (await countTypeUse(manager, workshopId)).get(id));
+}
+
+/** What may be left out of the form, as a new type has it. */
+const none = {
+  curveId: null,
+  ownCurve: null,
+  pulseShortS: null,
+  pulseShortMilliohm: null,
+  pulseLongerS: null,
+  pulseLongerMilliohm: null,
+  coldCurrentPercent: null,
+  warmCurrentPercent: null,
+  prechargeBelowVolts: null,
+} satisfies Partial<ModuleType>;
+
+/** What was left out stays as it is. */
+const given = (input: ModuleTypeInput): ModuleTypeInput =>
+  Object.fromEntries(Object.entries(input).filter(([, value]) => value !== undefined)) as ModuleTypeInput;
+
+/** Curves and pulses against the rest of the type. @throws DomainError 400 at the field */
+function refuseMisfits(type: ModuleType): void {
+  if (type.curveId !== null && !publishedCurves(type.chemistry).some(({ id }) => id === type.curveId))
+    throw invalid({ curveId: 'This curve is of another chemistry. Choose one of this chemistry.' });
+  const own = type.ownCurve;
+  if (own !== null) {
+    const rows = own.soc.map((soc, at) => [soc, own.volts[at]!]);
+    if (!checkOwnCurve(rows, type.chemistry).ok)
+      throw invalid({ chemistry: 'Its own curve cannot be of this chemistry. Remove the curve first.' });
+  }
+  if (type.pulseShortS !== null && type.resistanceMilliohm === null)
+    throw invalid({ resistanceMilliohm: 'The pulses are read against the whole resistance. Type it.' });
+  try {
+    pulseSeconds(type);
+  } catch (error) {
+    if (!(error instanceof CalcInputError)) throw error;
+    throw invalid({
+      pulseLongerMilliohm: 'Must be under the long resistance that follows from the typed one. Check all three.',
+    });
+  }
 }
 
 async function refuseTakenName(

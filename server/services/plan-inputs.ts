@@ -3,8 +3,8 @@
  * kept as a charge, so that both see the same numbers.
  */
 import type { EntityManager } from 'typeorm';
-import { planCharge } from '@/calc/index';
-import type { PlanInput, RuledOutWay } from '@/calc/plan-types';
+import { chemistryParameters, planCharge, voltsAtSoc } from '@/calc/index';
+import type { ModuleParameters, PlanInput, RuledOutWay } from '@/calc/plan-types';
 import type { PlanDto, PlanRequest } from '@/shared/contract/plan';
 import type { FrozenInputs } from '../entities/charge-json';
 import type { Meter } from '../entities/meter';
@@ -12,7 +12,7 @@ import type { ModuleType } from '../entities/module-type';
 import type { Spare } from '../entities/spare';
 import type { SpareReading } from '../entities/spare-reading';
 import { conflict, invalid, notFound } from '../errors/domain-error';
-import { listUsableChannels } from '../repositories/chargers.repository';
+import { listChannels, listUsableChannels } from '../repositories/chargers.repository';
 import { listMeters } from '../repositories/meters.repository';
 import { findModuleType } from '../repositories/module-types.repository';
 import { listOpenHolds } from '../repositories/open-holds.repository';
@@ -23,6 +23,7 @@ import { workshopForPlans } from '../repositories/workshop-for-plans.repository'
 import { channelHolders } from './channel-availability';
 import { titleOf } from './charge-words';
 import { toInstant } from './instants';
+import { learnedByCharger } from './learned-factors';
 import { correctedVolt, meterOffsetSdVolts } from './meter-trust';
 import { neighbourFor } from './neighbour-for';
 import {
@@ -47,6 +48,8 @@ export interface PlanInputs {
   input: PlanInput;
   /** What a charge keeps of it. */
   frozen: FrozenInputs;
+  /** The target as it was typed, the meter's offset still in it; of a state of charge its volts. */
+  typedVolts: number;
   /** The spare that a resistor would join to this one. */
   neighbourSpareId: string | null;
   /** Names of the channels in the plan, and from when each is free, by id. */
@@ -86,9 +89,12 @@ export async function buildPlanInputs(
   if (readyBy !== null && readyBy <= now) throw invalid({ readyBy: 'This time has passed. Type a later one.' });
 
   const spareNow = spareState(spare, type, reading, spareMeter, now);
-  const targetVolts = correctedVolt(request.targetVolts, packMeter);
+  const module = moduleParameters(type);
+  const soc = typeof request.targetSoc === 'number' ? request.targetSoc / 100 : null;
+  const typedVolts = request.targetVolts ?? voltsOf(module, soc);
+  const targetVolts = soc === null ? correctedVolt(typedVolts, packMeter) : typedVolts;
   const toleranceMillivolts = request.toleranceMillivolts ?? workshop.toleranceMillivolts;
-  const bench = await channelsFor(manager, workshopId, spare.id, meters, now);
+  const bench = await channelsFor(manager, workshopId, spare, request.withoutLearned === true, meters, now);
   const meterVolts = meterOffsetSdVolts(
     [packMeter, spareMeter].filter((meter) => meter !== null),
     now,
@@ -103,10 +109,11 @@ export async function buildPlanInputs(
   );
   const frozen: FrozenInputs = {
     ...spreads,
-    module: moduleParameters(type),
+    module,
     spare: spareNow,
     target: {
       volts: targetVolts,
+      ...(soc === null ? {} : { soc }),
       toleranceVolts: toleranceMillivolts / 1000,
       meterId: request.meterId,
       celsius: request.packCelsius,
@@ -134,9 +141,11 @@ export async function buildPlanInputs(
       seed: frozen.seed,
       readyByS: readyBy === null ? null : (readyBy - now) / 1000,
       clipOnAtS: (clipOnAt - now) / 1000,
+      acceptWideBand: request.acceptWideBand === true,
       ...spreads,
     },
     frozen,
+    typedVolts,
     neighbourSpareId: neighbour?.spareId ?? null,
     channelNames: bench.names,
     blockedChannels: bench.blocked,
@@ -167,10 +176,16 @@ export async function planFor(
       plan: { ...plan, ruledOut: [...plan.ruledOut, ...inputs.blockedChannels] },
       plannedAt: toInstant(now),
       clipOnAt: toInstant(inputs.clipOnAt),
+      targetVolts: inputs.frozen.target.volts,
       toleranceMillivolts: inputs.toleranceMillivolts,
       channels: inputs.channelNames,
     },
   };
+}
+
+/** Rest voltage of a state of charge on the type's curve, V, to the tenth of a millivolt. */
+function voltsOf({ curve, chemistry }: ModuleParameters, soc: number | null): number {
+  return Math.round(voltsAtSoc(curve ?? chemistryParameters(chemistry).curve, soc ?? 0) * 1e4) / 1e4;
 }
 
 async function plannedSpare(
@@ -207,15 +222,18 @@ function packMeterOf(request: PlanRequest, meters: ReadonlyMap<string, Meter>): 
 async function channelsFor(
   manager: EntityManager,
   workshopId: string,
-  spareId: string,
+  spare: Spare,
+  withoutLearned: boolean,
   meters: ReadonlyMap<string, Meter>,
   now: number,
 ): Promise<{ channels: FrozenInputs['channels']; names: PlanDto['channels']; blocked: RuledOutWay[] }> {
-  const holds = (await listOpenHolds(manager, workshopId)).filter(({ charge }) => charge.spareId !== spareId);
+  const holds = (await listOpenHolds(manager, workshopId)).filter(({ charge }) => charge.spareId !== spare.id);
   const holders = channelHolders(holds, now);
   const channels: FrozenInputs['channels'] = [];
   const names: PlanDto['channels'] = {};
   const blocked: RuledOutWay[] = [];
+  const chargerOf = new Map((await listChannels(manager, workshopId)).map(({ id, chargerId }) => [id, chargerId]));
+  const learned = await learnedByCharger(manager, workshopId, spare.moduleTypeId, chargerOf);
   for (const { channel, charger } of await listUsableChannels(manager, workshopId)) {
     const holder = holders.get(channel.id);
     if (holder?.freeAt === null) {
@@ -235,7 +253,9 @@ async function channelsFor(
       freeAt: freeAt > now ? toInstant(freeAt) : null,
     };
     const meter = meters.get(charger.meterId ?? '') ?? null;
-    channels.push(channelParameters(channel, meter, (freeAt - now) / 1000, now));
+    channels.push(
+      channelParameters(channel, meter, (freeAt - now) / 1000, now, withoutLearned ? null : learned.get(charger.id)),
+    );
   }
   return { channels, names, blocked };
 }

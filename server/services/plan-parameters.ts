@@ -1,9 +1,11 @@
 /** Rows of the stock and the equipment as the planner takes them: SI units, and what is not typed as null. */
+import { longResistance, publishedCurves, pulseTimeConstant } from '@/calc/index';
 import type {
   ChannelParameters,
   ModuleParameters,
   ResistorParameters,
   SpareState,
+  TimeFactor,
   WorkshopParameters,
 } from '@/calc/plan-types';
 import type { Channel } from '../entities/channel';
@@ -26,6 +28,24 @@ const BUSBARS_S = 720;
 /** A reading's temperature says how warm the module is for this long, s: it follows the room within half a day. A guess. */
 const TEMPERATURE_GOOD_S = 12 * 3600;
 
+const shareOf = (percent: number | null): number | null => (percent === null ? null : percent / 100);
+
+/**
+ * Time constant of the over-voltage by the two pulses of a type, s; null where they were not typed, or where no whole
+ * resistance stands beside them.
+ * @throws CalcInputError where they do not fit it
+ */
+export function pulseSeconds(type: ModuleType): number | null {
+  const { pulseShortS, pulseShortMilliohm, pulseLongerS, pulseLongerMilliohm, resistanceMilliohm } = type;
+  if (pulseShortS === null || pulseShortMilliohm === null) return null;
+  if (pulseLongerS === null || pulseLongerMilliohm === null || resistanceMilliohm === null) return null;
+  return pulseTimeConstant(
+    { afterS: pulseShortS, ohm: pulseShortMilliohm / 1000 },
+    { afterS: pulseLongerS, ohm: pulseLongerMilliohm / 1000 },
+    longResistance(type.resistanceKind, resistanceMilliohm / 1000),
+  );
+}
+
 export const moduleParameters = (type: ModuleType): ModuleParameters => ({
   chemistry: type.chemistry,
   groupsInSeries: type.groupsInSeries,
@@ -41,7 +61,11 @@ export const moduleParameters = (type: ModuleType): ModuleParameters => ({
   resistanceOhm: type.resistanceMilliohm === null ? null : type.resistanceMilliohm / 1000,
   resistanceKind: type.resistanceKind,
   linkResistanceOhm: type.linkMilliohm / 1000,
-  curve: null,
+  curve: type.ownCurve ?? publishedCurves(type.chemistry).find(({ id }) => id === type.curveId)?.curve ?? null,
+  polarisationTimeConstantS: pulseSeconds(type),
+  coldCurrentShare: shareOf(type.coldCurrentPercent),
+  warmCurrentShare: shareOf(type.warmCurrentPercent),
+  prechargeBelowVolts: type.prechargeBelowVolts,
   selfDischargePerMonth: type.selfDischargePercentPerMonth === null ? null : type.selfDischargePercentPerMonth / 100,
 });
 
@@ -52,7 +76,7 @@ export function spareState(
   meter: Meter | null,
   now: number,
 ): SpareState {
-  const { capacityAh, source } = usedCapacity(spare, type);
+  const { capacityAh, source, sdAh } = usedCapacity(spare, type);
   const readingAgeS = Math.max(0, (now - reading.at) / 1000);
   return {
     groupVolts: correctedVolts(reading.groupVolts, meter),
@@ -61,7 +85,7 @@ export function spareState(
     meterId: reading.meterId,
     capacityAh,
     capacitySource: source,
-    capacityRelativeSd: null,
+    capacityRelativeSd: spare.capacitySdAh === null ? null : sdAh / capacityAh,
     condition: spare.quarantinedAt === null ? spare.condition : 'quarantined',
     quarantineReason: spare.quarantineReason,
   };
@@ -72,6 +96,8 @@ export const channelParameters = (
   meter: Meter | null,
   freeInS: number,
   now: number,
+  /** Learned of the planned type on this charger; null: taken off; left out: nothing yet. */
+  timeFactor?: TimeFactor | null,
 ): ChannelParameters => ({
   channelId: channel.id,
   name: channel.name,
@@ -83,12 +109,19 @@ export const channelParameters = (
   senses: channel.senses,
   leadResistanceOhm: channel.leadMilliohm / 1000,
   displayStepVolts: channel.displayStepMillivolts / 1000,
+  ...(channel.displayStepAmps === null ? {} : { displayStepAmps: channel.displayStepAmps }),
+  ...(channel.leadsMeasured === null ? {} : { leadsMeasured: channel.leadsMeasured }),
+  ...(channel.deratingAboveCelsius === null || channel.deratingPercent === null
+    ? {}
+    : { derating: { aboveCelsius: channel.deratingAboveCelsius, ampsShare: channel.deratingPercent / 100 } }),
+  ...(channel.dutyPercent === null ? {} : { duty: channel.dutyPercent / 100 }),
   singleGroup: channel.singleGroup,
   canDischarge: channel.canDischarge,
   dischargeAmps: channel.dischargeAmps,
   loadOhm: channel.loadOhm,
   freeInS,
   offsetSdVolts: chargerOffsetSdVolts(meter, now),
+  ...(timeFactor === undefined ? {} : { timeFactor }),
 });
 
 export const resistorParameters = (resistor: LevellingResistor): ResistorParameters => ({

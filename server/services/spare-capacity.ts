@@ -1,3 +1,4 @@
+import { CAPACITY_RELATIVE_SD } from '@/calc/plan/default-spreads';
 import type { NumberSource } from '@/calc/plan-types';
 import type { ModuleType } from '../entities/module-type';
 import type { Spare } from '../entities/spare';
@@ -9,6 +10,8 @@ export interface UsedCapacity {
   /** Of one group, Ah. */
   capacityAh: number;
   source: NumberSource;
+  /** Standard deviation: told by a charge, else what the source is good for, Ah. */
+  sdAh: number;
 }
 
 /**
@@ -16,11 +19,18 @@ export interface UsedCapacity {
  * used module, which is then a guess whatever source was chosen.
  */
 export function usedCapacity(
-  spare: Pick<Spare, 'capacityAh' | 'healthPercent' | 'capacitySource'>,
+  spare: Pick<Spare, 'capacityAh' | 'healthPercent' | 'capacitySource' | 'capacitySdAh'>,
   type: Pick<ModuleType, 'ratedAh'>,
 ): UsedCapacity {
-  if (spare.capacityAh !== null) return { capacityAh: spare.capacityAh, source: spare.capacitySource };
-  if (spare.healthPercent !== null)
-    return { capacityAh: (type.ratedAh * spare.healthPercent) / 100, source: spare.capacitySource };
-  return { capacityAh: type.ratedAh * UNKNOWN_HEALTH, source: 'guessed' };
+  const by = (capacityAh: number, source: NumberSource): UsedCapacity => ({
+    capacityAh,
+    source,
+    sdAh: capacityAh * CAPACITY_RELATIVE_SD[source],
+  });
+  if (spare.capacityAh !== null) {
+    const typed = by(spare.capacityAh, spare.capacitySource);
+    return { ...typed, sdAh: spare.capacitySdAh ?? typed.sdAh };
+  }
+  if (spare.healthPercent !== null) return by((type.ratedAh * spare.healthPercent) / 100, spare.capacitySource);
+  return by(type.ratedAh * UNKNOWN_HEALTH, 'guessed');
 }

@@ -6,6 +6,7 @@ import type { Spare } from '../entities/spare';
 import { invalid, notFound } from '../errors/domain-error';
 import { findModuleType } from '../repositories/module-types.repository';
 import { personRefs } from '../repositories/person-refs.repository';
+import { listSpareCapacities } from '../repositories/spare-capacities.repository';
 import { lastMoveOf } from '../repositories/spare-moves.repository';
 import { findLastSpareReading, findSpare, openChargesBySpare } from '../repositories/spares.repository';
 import { spareDto } from './spares-dto';
@@ -23,6 +24,7 @@ export async function spareDtoOf(manager: EntityManager, workshopId: string, id:
     charge: (await openChargesBySpare(manager, workshopId)).get(id),
     move: (await lastMoveOf(manager, workshopId, id)) ?? undefined,
     people: await personRefs(manager, workshopId),
+    capacities: await listSpareCapacities(manager, workshopId, id),
   });
 }
 

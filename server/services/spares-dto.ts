@@ -1,8 +1,8 @@
-import { CAPACITY_RELATIVE_SD } from '@/calc/plan/default-spreads';
 import type { PersonRef } from '@/shared/contract/common';
-import type { SpareDto, SpareReadingDto, SpareWhere } from '@/shared/contract/spare';
+import type { SpareCapacityDto, SpareDto, SpareReadingDto, SpareWhere } from '@/shared/contract/spare';
 import type { ModuleType } from '../entities/module-type';
 import type { Spare } from '../entities/spare';
+import type { SpareCapacity } from '../entities/spare-capacity';
 import type { SpareReading } from '../entities/spare-reading';
 import type { SpareMove } from '../repositories/spare-moves.repository';
 import type { SpareCharge } from '../repositories/spares.repository';
@@ -36,6 +36,18 @@ export const spareReadingDto = (
   movedBy: move && move.until > reading.at ? { id: move.charge.id, title: titleOf(move.charge) } : null,
 });
 
+const capacityDto = (capacity: SpareCapacity, people: People): SpareCapacityDto => ({
+  id: capacity.id,
+  at: toInstant(capacity.at),
+  by: personRef(people, capacity.personId),
+  ampHours: capacity.ampHours,
+  sdAh: capacity.sdAh,
+  source: capacity.source,
+  state: capacity.state,
+  apart: capacity.apart,
+  chargeId: capacity.chargeId,
+});
+
 export function spareDto(
   spare: Spare,
   type: ModuleType,
@@ -44,10 +56,11 @@ export function spareDto(
     charge: SpareCharge | undefined;
     move: SpareMove | undefined;
     people: People;
+    capacities: readonly SpareCapacity[];
   },
 ): SpareDto {
-  const { reading, charge, move, people } = around;
-  const { capacityAh, source } = usedCapacity(spare, type);
+  const { reading, charge, move, people, capacities } = around;
+  const { capacityAh, sdAh } = usedCapacity(spare, type);
   return {
     id: spare.id,
     label: spare.label,
@@ -66,7 +79,8 @@ export function spareDto(
     shelfVolts: type.shelfVolts,
     where: whereIs(spare, charge),
     usedCapacityAh: capacityAh,
-    capacitySdAh: capacityAh * CAPACITY_RELATIVE_SD[source],
+    capacitySdAh: sdAh,
+    capacities: capacities.map((one) => capacityDto(one, people)),
     quarantine:
       spare.quarantinedAt === null
         ? null

@@ -6,6 +6,7 @@ import { Spare } from '../entities/spare';
 import { invalid, stale } from '../errors/domain-error';
 import { listModuleTypes } from '../repositories/module-types.repository';
 import { personRefs } from '../repositories/person-refs.repository';
+import { capacitiesBySpare, insertSpareCapacity } from '../repositories/spare-capacities.repository';
 import { lastMoveOf, lastMoves } from '../repositories/spare-moves.repository';
 import {
   findLastSpareReading,
@@ -23,6 +24,7 @@ import { titleOf } from './charge-words';
 import { newId } from './ids';
 import { toInstant } from './instants';
 import { nameTaken } from './name-taken';
+import { usedCapacity } from './spare-capacity';
 import { knownSpare, spareDtoOf, typeOf } from './spare-file';
 import { readingRow } from './spare-readings.service';
 import { spareDto, spareReadingDto } from './spares-dto';
@@ -37,6 +39,7 @@ export async function spares(deps: Deps, member: Member, query: SparesQuery): Pr
   const charges = await openChargesBySpare(manager, workshopId);
   const moves = await lastMoves(manager, workshopId);
   const people = await personRefs(manager, workshopId);
+  const capacities = await capacitiesBySpare(manager, workshopId);
   const looked = query.q?.trim().toLowerCase() ?? '';
   return (await listSpares(manager, workshopId)).flatMap((spare) => {
     const type = types.get(spare.moduleTypeId);
@@ -46,6 +49,7 @@ export async function spares(deps: Deps, member: Member, query: SparesQuery): Pr
       charge: charges.get(spare.id),
       move: moves.get(spare.id),
       people,
+      capacities: capacities.get(spare.id) ?? [],
     });
     if (query.where === undefined ? dto.where === 'fitted' : dto.where !== query.where) return [];
     const found = [dto.label, dto.typeName, dto.shelfPlace ?? ''].some((text) => text.toLowerCase().includes(looked));
@@ -86,6 +90,7 @@ export async function addSpare(deps: Deps, member: Member, input: NewSpareInput,
     const row = Object.assign(new Spare(), columns, {
       id: newId(),
       workshopId,
+      capacitySdAh: null,
       quarantineReason: null,
       quarantinedAt: null,
       quarantinedById: null,
@@ -96,6 +101,7 @@ export async function addSpare(deps: Deps, member: Member, input: NewSpareInput,
     const first = await readingRow(manager, member, row.id, type, reading, now, 'reading.');
     await saveSpare(manager, row);
     await insertSpareReading(manager, first);
+    await noteTyped(manager, member, row, now);
     return spareDtoOf(manager, workshopId, row.id);
   });
   announceStock(deps, member, now);
@@ -118,11 +124,37 @@ export async function changeSpare(
     await refuseTakenLabel(manager, workshopId, input.label, id);
     refuseUnmeasured(input);
     if (input.moduleTypeId !== row.moduleTypeId) await refuseOtherType(manager, workshopId, row, input.moduleTypeId);
+    const typed =
+      input.capacityAh !== row.capacityAh ||
+      input.healthPercent !== row.healthPercent ||
+      input.capacitySource !== row.capacitySource;
+    // What a charge has told of the doubt belongs to the number that it told.
+    if (typed) row.capacitySdAh = null;
     await saveSpare(manager, Object.assign(row, input, { rev: rev + 1 }));
+    if (typed) await noteTyped(manager, member, row, now);
     return spareDtoOf(manager, workshopId, id);
   });
   announceStock(deps, member, now);
   return dto;
+}
+
+/** A capacity in ampere-hours that somebody has typed, with what its source is good for. */
+async function noteTyped(manager: EntityManager, member: Member, row: Spare, now: number): Promise<void> {
+  if (row.capacityAh === null) return;
+  const { capacityAh, sdAh } = usedCapacity(row, { ratedAh: row.capacityAh });
+  await insertSpareCapacity(manager, {
+    id: newId(),
+    workshopId: row.workshopId,
+    spareId: row.id,
+    ampHours: capacityAh,
+    sdAh,
+    source: 'typed',
+    state: 'used',
+    apart: null,
+    chargeId: null,
+    at: now,
+    personId: member.personId,
+  });
 }
 
 async function refuseTakenLabel(

@@ -11,6 +11,8 @@ const rules: Record<AlertKind, { sound: SoundName; after: readonly number[]; eve
   'step-swap': { sound: 'check-due', after: again },
   overdue: { sound: 'overdue', after: [0], everyMs: minute },
   'look-in-due': { sound: 'look-in', after: [0] },
+  // It asks for a look, not for a hand by the minute: heard once.
+  'odd-reading': { sound: 'overdue', after: [0] },
 };
 const urgency: readonly SoundName[] = ['overdue', 'check-due', 'ready', 'look-in'];
 

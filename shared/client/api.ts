@@ -125,6 +125,7 @@ export function makeApi(env: ApiEnvironment) {
     get: <T>(path: string, options?: CallOptions) => call<T>('GET', path, options),
     post: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('POST', path, { ...options, body }),
     patch: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PATCH', path, { ...options, body }),
+    put: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PUT', path, { ...options, body }),
     delete: <T = void>(path: string, options?: CallOptions) => call<T>('DELETE', path, options),
     /** The answer as a file. */
     blob: async (path: string, options: CallOptions = {}) => (await send('GET', path, options)).blob(),

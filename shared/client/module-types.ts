@@ -1,5 +1,5 @@
 import { queryOptions, useQuery } from '@tanstack/react-query';
-import type { ModuleTypeDto, ModuleTypeInput } from '@/shared/contract/equipment';
+import type { ModuleTypeDto, ModuleTypeInput, OwnCurveInput } from '@/shared/contract/equipment';
 import { api } from './api';
 import { roots } from './query-keys';
 import { staleTimes } from './stale-times';
@@ -30,6 +30,21 @@ export const useSaveModuleType = () =>
         ? api.patch<ModuleTypeDto>(`/module-types/${id}`, input, { rev })
         : api.post<ModuleTypeDto>('/module-types', input),
     changes: [roots.moduleTypes, roots.spares, roots.spare],
+  });
+
+/** Keeps a table as the type's own curve; 400: a sentence for each row in `fields` ('csv.4', 'csv' of the whole). */
+export const useSaveOwnCurve = () =>
+  useWrite({
+    send: ({ id, rev, csv }: OwnCurveInput & { id: string; rev: number }) =>
+      api.put<ModuleTypeDto>(`/module-types/${id}/curve`, { csv }, { rev }),
+    changes: [roots.moduleTypes],
+  });
+
+/** The published curve rules again. */
+export const useRemoveOwnCurve = () =>
+  useWrite({
+    send: ({ id, rev }: { id: string; rev: number }) => api.delete<ModuleTypeDto>(`/module-types/${id}/curve`, { rev }),
+    changes: [roots.moduleTypes],
   });
 
 export const useRemoveModuleType = () =>

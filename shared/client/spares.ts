@@ -1,5 +1,6 @@
 import { keepPreviousData, queryOptions, useQuery } from '@tanstack/react-query';
 import type {
+  CapacityAnswerInput,
   NewSpareInput,
   QuarantineInput,
   SpareDto,
@@ -66,6 +67,15 @@ export const useAddSpareReading = () =>
   useWrite(
     spareWrite(({ id, ...input }: SpareReadingInput & { id: string }) =>
       api.post<SpareDto>(`/spares/${id}/readings`, input),
+    ),
+  );
+
+/** Takes what a charge has found as the capacity (`capacities` with the state 'found'), or leaves it. */
+export const useAnswerCapacity = () =>
+  useWrite(
+    spareWrite(
+      ({ id, rev, capacityId, answer }: CapacityAnswerInput & { id: string; rev: number; capacityId: string }) =>
+        api.post<SpareDto>(`/spares/${id}/capacities/${capacityId}`, { answer }, { rev }),
     ),
   );
 

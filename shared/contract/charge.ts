@@ -1,6 +1,7 @@
 import * as z from 'zod/mini';
 import { id, instant, optionalText, reason, type Instant, type PersonRef } from './common';
-import type { CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
+import type { OddSeen, Reckoning } from '@/calc/live-types';
+import type { Band, CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
 import { typedGroupVolts } from './group-volts';
 import { groupVolts, optionalQuantity } from './quantity';
 
@@ -73,6 +74,8 @@ const readingShape = {
   celsius: optionalQuantity({ name: 'Temperature', unit: '°C', min: -40, max: 120 }),
   groupVolts: z.optional(z.nullable(typedGroupVolts)),
   meterId: z.optional(z.nullable(id)),
+  /** Where the volts between the clips were read. Left out: at the charger, by its own display, unless a meter is named. */
+  takenAt: z.optional(z.nullable(z.enum(['supply', 'module']))),
 };
 /** At least one number; which of them is up to what can be read. */
 export const readingSchema = z.object(readingShape).check(
@@ -215,7 +218,10 @@ export interface ReadingDto {
   amps: number | null;
   celsius: number | null;
   groupVolts: number[] | null;
+  /** Meter it was read with; null: the charger's own display. */
   meterId: string | null;
+  /** Where the volts between the clips were read; null: nobody has said, or none were. */
+  takenAt: 'supply' | 'module' | null;
   by: PersonRef;
   source: 'typed';
   /** Not null: this one is replaced by that one. */
@@ -239,7 +245,29 @@ export interface RestCheckDto {
   by: PersonRef;
   groupVolts: number[];
   celsius: number | null;
+  /** It came before the minimum rest was over. */
+  early: boolean;
   verdict: CheckVerdict;
+}
+
+/** A reading that nothing explains, and is not learned from. */
+export interface OddDto extends Omit<OddSeen, 'sinceS'> {
+  /** Instant of the first reading that is so. */
+  since: Instant;
+}
+
+/** What the group readings since the end of current say of the rest. */
+export interface RestDto {
+  /** Where each group will settle, V: 10, 50 and 90 %. */
+  settledVolts: Band[];
+  /** That what is still to come is within a tenth of the tolerance in every group, 0…1. */
+  chance: number;
+  /** The chance is 90 % or more: the check may come before the minimum rest is over. */
+  restedEnough: boolean;
+  /** Since when, or when that is expected; null: not within a day. */
+  enoughAt: Instant | null;
+  /** Group readings behind it. */
+  readings: number;
 }
 
 export interface ChargeLink {
@@ -254,6 +282,8 @@ export interface ChargeDto extends ChargeCardDto {
   /** Meter the pack was read with, and at which temperature: a top-up is planned with both again. */
   meterId: string | null;
   targetCelsius: number | null;
+  /** The state of charge that was typed as the target, %; null: volts were. A top-up is planned with it again. */
+  targetSoc: number | null;
   /** The target as it was typed, with that meter's offset still in it; `targetVolts` is without. */
   targetTypedVolts: number;
   /** The charge that this one went on from, and the one that went on from this. */
@@ -273,6 +303,12 @@ export interface ChargeDto extends ChargeCardDto {
   readings: ReadingDto[];
   restChecks: RestCheckDto[];
   events: ChargeEventDto[];
+  /** Null where nothing rests for sure (nobody has said that the current is off), or with fewer than three readings. */
+  rest: RestDto | null;
+  /** What is odd about the latest readings; null: nothing, or it has passed. */
+  odd: OddDto | null;
+  /** What the readings of this charge have taught; null each where they have not told. */
+  learned: Reckoning['learned'];
   dominant: string | null;
   createdAt: Instant;
   /**

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import type { OcvTable } from '@/calc/types';
 import { optionalInstant, optionalText, text, type Instant } from './common';
 import { optionalQuantity, quantity } from './quantity';
 
@@ -32,8 +33,45 @@ export const moduleTypeSchema = z
     shelfVolts: optionalQuantity({ name: 'Shelf voltage', unit: 'V', min: 0.5, max: 5 }),
     selfDischargePercentPerMonth: optionalQuantity({ name: 'Self-discharge', unit: '%', min: 0, max: 60 }),
     note: optionalText('The note'),
+    // What follows may be left out: it stays as it is then, and a new type has none.
+    /** Published curve of its chemistry; null: the usual one. */
+    curveId: z.optional(z.nullable(z.string().check(z.maxLength(60)))),
+    /** Two pulses of current tell how fast the over-voltage builds up: all four, or none. */
+    pulseShortS: z.optional(optionalQuantity({ name: 'The short pulse', unit: 's', min: 0, aboveMin: true, max: 600 })),
+    pulseShortMilliohm: z.optional(
+      optionalQuantity({ name: 'Resistance', unit: 'mΩ', min: 0, aboveMin: true, max: 1000 }),
+    ),
+    pulseLongerS: z.optional(
+      optionalQuantity({ name: 'The longer pulse', unit: 's', min: 0, aboveMin: true, max: 7200 }),
+    ),
+    pulseLongerMilliohm: z.optional(
+      optionalQuantity({ name: 'Resistance', unit: 'mΩ', min: 0, aboveMin: true, max: 1000 }),
+    ),
+    /** Share of its charge current under 10 °C and over 45 °C; empty: all of it. */
+    coldCurrentPercent: z.optional(optionalQuantity({ name: 'Current when cold', unit: '%', min: 1, max: 100 })),
+    warmCurrentPercent: z.optional(optionalQuantity({ name: 'Current when warm', unit: '%', min: 1, max: 100 })),
+    /** A group that rests below is first brought up to it at a tenth of its capacity an hour; empty: no such step. */
+    prechargeBelowVolts: z.optional(optionalQuantity({ name: 'Precharge below', unit: 'V', min: 0.1, max: 4 })),
   })
   .check(
+    z.refine((type) => [0, 4].includes(pulseNumbers(type)), {
+      message: 'Type both pulses with seconds and mΩ, or leave all four empty.',
+      path: ['pulseShortS'],
+    }),
+    z.refine((type) => pulseNumbers(type) !== 4 || type.pulseLongerS! > type.pulseShortS!, {
+      message: 'Must be later than the short pulse.',
+      path: ['pulseLongerS'],
+    }),
+    z.refine((type) => pulseNumbers(type) !== 4 || type.pulseLongerMilliohm! > type.pulseShortMilliohm!, {
+      message: 'Must be more than the short pulse sees.',
+      path: ['pulseLongerMilliohm'],
+    }),
+    z.refine(
+      (type) =>
+        (type.prechargeBelowVolts ?? null) === null ||
+        (type.prechargeBelowVolts! > type.floorVolts && type.prechargeBelowVolts! < type.chargeLimitVolts),
+      { message: 'Must lie between the floor and the charge limit.', path: ['prechargeBelowVolts'] },
+    ),
     z.refine((type) => type.dischargeLimitVolts < type.chargeLimitVolts, {
       message: 'Must be under the charge limit.',
       path: ['dischargeLimitVolts'],
@@ -53,10 +91,36 @@ export const moduleTypeSchema = z
       { message: 'Outside the limits of this type.', path: ['shelfVolts'] },
     ),
   );
+interface PulseNumbers {
+  pulseShortS?: number | null;
+  pulseShortMilliohm?: number | null;
+  pulseLongerS?: number | null;
+  pulseLongerMilliohm?: number | null;
+}
+/** How many of the four are there. */
+function pulseNumbers(type: PulseNumbers): number {
+  const all = [type.pulseShortS, type.pulseShortMilliohm, type.pulseLongerS, type.pulseLongerMilliohm];
+  return all.filter((one) => (one ?? null) !== null).length;
+}
+
+/** A curve as CSV: state of charge and rest volts of one cell, a row each. */
+export const ownCurveSchema = z.object({
+  csv: z
+    .string()
+    .check(
+      z.trim(),
+      z.minLength(1, 'There is nothing in it. Paste or choose a table.'),
+      z.maxLength(100_000, 'This is too long for a curve. Leave out rows: one for each half per cent is plenty.'),
+    ),
+});
+export type OwnCurveInput = z.infer<typeof ownCurveSchema>;
+
 export type ModuleTypeInput = z.infer<typeof moduleTypeSchema>;
 
-export interface ModuleTypeDto extends ModuleTypeInput {
+export interface ModuleTypeDto extends Required<ModuleTypeInput> {
   id: string;
+  /** The workshop's own curve, which goes before the published ones; null: none. */
+  ownCurve: OcvTable | null;
   spareCount: number;
   chargeCount: number;
   rev: number;
@@ -75,6 +139,16 @@ export const channelSchema = z
     senses: z.enum(['own-terminals', 'module']),
     leadMilliohm: quantity({ name: 'Leads', unit: 'mΩ', min: 0, max: 1000 }),
     displayStepMillivolts: quantity({ name: 'Display step', unit: 'mV', min: 0.1, max: 1000 }),
+    // What follows may be left out: it stays as it is then, and a new channel has none.
+    /** What its current is set and shown in. */
+    displayStepAmps: z.optional(optionalQuantity({ name: 'Current step', unit: 'A', min: 0, aboveMin: true, max: 10 })),
+    /** False: the leads are a guess. */
+    leadsMeasured: z.optional(z.nullable(z.boolean())),
+    /** In a room warmer than this it gives only that share of its current: both, or none. */
+    deratingAboveCelsius: z.optional(optionalQuantity({ name: 'Less current above', unit: '°C', min: 0, max: 80 })),
+    deratingPercent: z.optional(optionalQuantity({ name: 'Current when warm', unit: '%', min: 1, max: 99 })),
+    /** Share of the time in which it gives current, between thermal pauses; empty: all of it. */
+    dutyPercent: z.optional(optionalQuantity({ name: 'Share of the time', unit: '%', min: 1, max: 100 })),
     singleGroup: z.boolean(),
     canDischarge: z.boolean(),
     dischargeAmps: optionalQuantity({ name: 'Discharge current', unit: 'A', min: 0, aboveMin: true, max: 2000 }),
@@ -85,6 +159,10 @@ export const channelSchema = z
       message: 'Must be under the current.',
       path: ['minAmps'],
     }),
+    z.refine(
+      (channel) => ((channel.deratingAboveCelsius ?? null) === null) === ((channel.deratingPercent ?? null) === null),
+      { message: 'Type the temperature and the share, or leave both empty.', path: ['deratingPercent'] },
+    ),
     z.refine((channel) => !channel.canDischarge || channel.dischargeAmps !== null || channel.loadOhm !== null, {
       message: 'A channel that discharges needs its current or its load resistor.',
       path: ['dischargeAmps'],
@@ -102,7 +180,7 @@ export const chargerSchema = z.object({
 });
 export type ChargerInput = z.infer<typeof chargerSchema>;
 
-export interface ChannelDto extends Omit<ChannelInput, 'id'> {
+export interface ChannelDto extends Required<Omit<ChannelInput, 'id'>> {
   id: string;
   chargerId: string;
   chargerName: string;

@@ -7,7 +7,7 @@ import * as z from 'zod/mini';
 export interface QuantityRule {
   /** What it is, as the sentence begins: 'Target', 'Amps'. */
   name: string;
-  unit: '' | 'V' | 'mV' | 'A' | 'Ah' | 'W' | 'mΩ' | 'Ω' | '°C' | '%' | 'min' | 'h' | 'm' | 'in' | 'C';
+  unit: '' | 'V' | 'mV' | 'A' | 'Ah' | 'W' | 'mΩ' | 'Ω' | '°C' | '%' | 's' | 'min' | 'h' | 'm' | 'in' | 'C';
   min?: number;
   max?: number;
   /** `min` itself is refused too. */
@@ -17,7 +17,7 @@ export interface QuantityRule {
 
 export type QuantityReading = { ok: true; value: number } | { ok: false; message: string };
 
-const unitPattern = /\s*(mv|mω|mohm|ohm|ω|volts?|amps?|v|ah|a|w|°\s*c|%|min|h|m|in|c)$/i;
+const unitPattern = /\s*(mv|mω|mohm|ohm|ω|volts?|amps?|v|ah|a|w|°\s*c|%|min|h|m|in|c|s)$/i;
 const shown = (value: number): string => String(value).replace('-', '−');
 const withUnit = (text: string, unit: string): string => (unit ? `${text}\u00a0${unit}` : text);
 

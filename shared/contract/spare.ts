@@ -80,6 +80,29 @@ export interface SpareReadingDto {
   movedBy: { id: string; title: string } | null;
 }
 
+export type CapacitySource = 'typed' | 'two readings';
+/** 'used': it stands in the spare's capacity; 'found': it disagrees and waits for a person; 'left': a person has left it. */
+export type CapacityState = 'used' | 'found' | 'left';
+
+/** Takes what a charge has found as the spare's capacity, or leaves it. */
+export const capacityAnswerSchema = z.object({ answer: z.enum(['take', 'leave']) });
+export type CapacityAnswerInput = z.infer<typeof capacityAnswerSchema>;
+
+/** A figure of the capacity of one group of a spare. */
+export interface SpareCapacityDto {
+  id: string;
+  at: Instant;
+  by: PersonRef;
+  ampHours: number;
+  /** Standard deviation, Ah. */
+  sdAh: number;
+  source: CapacitySource;
+  state: CapacityState;
+  /** How far from what was known before, in standard deviations of the difference; null: typed. */
+  apart: number | null;
+  chargeId: string | null;
+}
+
 export interface SpareDto extends SpareInput {
   id: string;
   typeName: string;
@@ -92,6 +115,8 @@ export interface SpareDto extends SpareInput {
   /** Capacity used in plans, Ah, and its standard deviation. */
   usedCapacityAh: number;
   capacitySdAh: number;
+  /** What was ever typed or found of the capacity, newest first. One that is 'found' waits for an answer. */
+  capacities: SpareCapacityDto[];
   quarantine: { reason: string; at: Instant; by: PersonRef } | null;
   charge: { id: string; title: string; stage: string; rev: number } | null;
   reading: SpareReadingDto | null;

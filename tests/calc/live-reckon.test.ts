@@ -4,6 +4,7 @@ import {
   planCharge,
   reckonCharge,
   socAtVolts,
+  voltsAtSoc,
   type PlanOption,
   type Reckoning,
 } from '@/calc/index';
@@ -161,14 +162,23 @@ describe('a running charge and its readings', () => {
     expect(read.currentEndS).toBeLessThan(without.currentEndS + 60);
   });
 
-  it('narrows as the charge goes in: at 10, 50 and 90 % of it', () => {
-    const widths = [0.1, 0.5, 0.9].map((share) => {
-      const nowS = share * NOMINAL_S;
-      const { readyS } = reckon(over, { nowS, readings: [at(nowS - 1, { amps: 10 })] });
+  it('narrows with volts as the charge goes in, at 10, 50 and 90 % of it, and by ampere-hours alone hardly', () => {
+    const width = (share: number, withVolts: boolean): number => {
+      const times = Array.from({ length: 9 }, (_, k) => ((k + 1) / 9) * share * NOMINAL_S);
+      const readings = times.map((s) => {
+        // 10 A for so long, and over the long resistance of 2 mohm, 1/2.7 of it at once and the rest with 300 s, 20 mV a group.
+        const rest = voltsAtSoc(curve, socAtVolts(curve, 3.75) + s / 360 / 66);
+        const overVolts = 0.02 * (1 - (1 - 1 / 2.7) * Math.exp(-s / 300));
+        return at(s, { amps: 10, terminalVolts: withVolts ? 2 * (rest + overVolts) : null });
+      });
+      const { readyS } = reckon(over, { nowS: share * NOMINAL_S, readings });
       return readyS.p90 - readyS.p10;
-    });
-    expect(widths[1]!).toBeLessThan(0.85 * widths[0]!);
-    expect(widths[2]!).toBeLessThan(0.85 * widths[1]!);
+    };
+    const [early, half, late] = [0.1, 0.5, 0.9].map((share) => width(share, true));
+    expect(half!).toBeLessThan(0.95 * early!);
+    expect(late!).toBeLessThan(0.9 * early!);
+    // The capacity is as unknown as before: what has gone in does not say how much still has to.
+    expect(width(0.5, false)).toBeGreaterThan(0.85 * width(0.1, false));
   });
 
   it('sets what the plan expects beside the last reading: volts between the clips, amps, degrees at that instant', () => {

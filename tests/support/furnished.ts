@@ -1,5 +1,6 @@
 /** Two workshops with one of everything, made over the API as their people do it: for tests that walk all routes. */
 import { Alert } from '@/server/entities/alert';
+import { SpareCapacity } from '@/server/entities/spare-capacity';
 import { makeSleeper } from '@/server/live/sleeper-loop';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { ChargerDto, MeterDto, ModuleTypeDto, ResistorDto } from '@/shared/contract/equipment';
@@ -33,6 +34,8 @@ export interface Furnished {
   spareId: string;
   optionId: string;
   alertId: string;
+  /** A capacity of the spare on the shelf that waits for an answer. */
+  capacityId: string;
   invitationId: string;
   invitationToken: string;
   wallId: string;
@@ -57,6 +60,7 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.restedId,
   furnished.spareId,
   furnished.alertId,
+  furnished.capacityId,
   furnished.invitationId,
   furnished.wallId,
 ];
@@ -168,6 +172,20 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     clearedAt: null,
   };
   await server.deps.dataSource.manager.insert(Alert, alert);
+  const capacity: SpareCapacity = {
+    id: `${name}-capacity`,
+    workshopId: workshop.id,
+    spareId: ids.spareId,
+    ampHours: 48,
+    sdAh: 1.5,
+    source: 'two readings',
+    state: 'found',
+    apart: 5,
+    chargeId,
+    at: server.clock.now(),
+    personId: workshop.people.technician.id,
+  };
+  await server.deps.dataSource.manager.insert(SpareCapacity, capacity);
   const { url } = await bodyOf<OneUseLinkDto>(
     manager.post('/api/invitations', { email: `nell@${name}.example.com`, role: 'technician' }),
     201,
@@ -183,6 +201,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     readingId: charge.readings[0]?.id ?? '',
     optionId: plan.options[0]?.id ?? '',
     alertId: alert.id,
+    capacityId: capacity.id,
     invitationId: invitation?.id ?? '',
     invitationToken: new URL(url).searchParams.get('token') ?? '',
     ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),

@@ -98,6 +98,7 @@ export interface TestAgent {
   get(path: string): Test;
   post(path: string, body?: object): Test;
   patch(path: string, body?: object): Test;
+  put(path: string, body?: object): Test;
   delete(path: string): Test;
   cookie(): string;
 }
@@ -200,6 +201,7 @@ const withCookie = (test: Test, cookie: string): Test => (cookie ? test.set('Coo
 export const makeAgent = (app: Express, cookie: () => string): TestAgent => ({
   get: (path) => withCookie(request(app).get(path), cookie()),
   post: (path, body) => withCookie(request(app).post(path), cookie()).send(body ?? {}),
+  put: (path, body) => withCookie(request(app).put(path), cookie()).send(body ?? {}),
   patch: (path, body) => withCookie(request(app).patch(path), cookie()).send(body ?? {}),
   delete: (path) => withCookie(request(app).delete(path), cookie()),
   cookie,

@@ -36,6 +36,7 @@ export function PlanFacts({ page, onChange }: { page: PlanPage; onChange: (chang
           meters={meters.data}
           today={page.today}
           toleranceHint={workshop.data ? String(workshop.data.toleranceMillivolts) : ''}
+          chemistry={page.chemistry}
           onChange={onChange}
           onLeave={page.leave}
         />

@@ -10,7 +10,7 @@ const PlanPicture = lazy(async () => ({ default: (await import('@/shared/ui/plan
 
 /** The picture of the chosen way; on the desk also what it comes to, and the acts. */
 export function PlanSide({ page, acts }: { page: PlanPage; acts: ReactNode }) {
-  const { chosen, dto, settled, now, refused } = page;
+  const { chosen, dto, now, refused } = page;
   const wide = useBreakpoint() === 'wide';
   return (
     <View style={{ rowGap: 18 }}>
@@ -20,7 +20,7 @@ export function PlanSide({ page, acts }: { page: PlanPage; acts: ReactNode }) {
             heading={wide ? 'The picture' : `${optionTitle(chosen)}, ${chosen.channelText.replace(/^.* · /, '')}`}
             option={chosen}
             clipOnAt={Date.parse(dto.clipOnAt)}
-            targetVolts={settled?.targetVolts ?? 0}
+            targetVolts={dto.targetVolts}
           />
         </Suspense>
       ) : null}

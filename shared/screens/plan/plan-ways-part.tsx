@@ -2,19 +2,40 @@ import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { OtherSpares } from '@/shared/ui/plan/other-spares';
 import { isOfTheModule, PlanRefused } from '@/shared/ui/plan/plan-refused';
+import { isPlateau, PlanPlateau } from '@/shared/ui/plan/plan-plateau';
 import { NoWay, PlanWork } from '@/shared/ui/plan/plan-work';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { ErrorState } from '@/shared/ui/states/error-state';
 import { Loading } from '@/shared/ui/states/loading';
+import type { PlanTyped } from '@/shared/ui/plan/plan-typed';
 import type { PlanPage } from './use-plan-page';
 
 /** Every way side by side, or why there is none yet. */
-export function PlanWaysPart({ page, onTake }: { page: PlanPage; onTake: (spareId: string) => void }) {
+export function PlanWaysPart({
+  page,
+  onTake,
+  onChange,
+}: {
+  page: PlanPage;
+  onTake: (spareId: string) => void;
+  onChange: (change: Partial<PlanTyped>) => void;
+}) {
   const { dto, refused, spare, settled, now, others, plan } = page;
+  if (dto && refused && isPlateau(dto.plan.refusals))
+    return (
+      <PlanPlateau
+        refusals={dto.plan.refusals}
+        onSoc={() => {
+          page.setOpen(true);
+          onChange({ targetBy: 'soc' });
+        }}
+        onAccept={() => onChange({ acceptWideBand: 'yes' })}
+      />
+    );
   if (dto && refused && spare)
     return (
       <View style={{ rowGap: 20 }}>
-        <PlanRefused spare={spare} refusals={dto.plan.refusals} targetVolts={settled?.targetVolts ?? 0} now={now} />
+        <PlanRefused spare={spare} refusals={dto.plan.refusals} targetVolts={dto.targetVolts} now={now} />
         {dto.plan.refusals.some(isOfTheModule) ? (
           <OtherSpares others={others} clipOnAt={Date.parse(dto.clipOnAt)} onTake={onTake} />
         ) : null}
@@ -30,6 +51,8 @@ export function PlanWaysPart({ page, onTake }: { page: PlanPage; onTake: (spareI
         now={now}
         old={plan.isPlaceholderData}
         onChoose={page.choose}
+        withoutLearned={page.typed.withoutLearned === 'yes'}
+        onWithoutLearned={(without) => onChange({ withoutLearned: without ? 'yes' : '' })}
       />
     );
   if (plan.isError && settled)

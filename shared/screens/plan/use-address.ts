@@ -21,6 +21,8 @@ export function useAddress(): { topUpOf: string | null; insteadOf: string | null
         ...emptyPlan,
         spareId: text('spare'),
         targetVolts: text('target'),
+        targetBy: text('soc') === '' ? '' : 'soc',
+        targetSoc: text('soc'),
         toleranceMillivolts: text('tolerance'),
         meterId: text('meter'),
         packCelsius: text('celsius'),

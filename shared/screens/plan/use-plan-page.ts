@@ -3,6 +3,7 @@ import { isProblem } from '@/shared/client/api-problem';
 import { useNow } from '@/shared/client/clock';
 import { useDraft } from '@/shared/client/drafts';
 import { useMeters } from '@/shared/client/meters';
+import { useModuleTypes } from '@/shared/client/module-types';
 import { usePlan } from '@/shared/client/plans';
 import { useSettled } from '@/shared/client/settled';
 import { useSpares } from '@/shared/client/spares';
@@ -11,7 +12,7 @@ import { useFormats } from '@/shared/ui/format/formats';
 import { dayOf } from '@/shared/ui/format/zone';
 import { bestOption } from '@/shared/ui/plan/best-option';
 import { isOfTheModule } from '@/shared/ui/plan/plan-refused';
-import { fieldOf, requestOf, type PlanField, type PlanTyped } from '@/shared/ui/plan/plan-typed';
+import { emptyPlan, fieldOf, requestOf, type PlanField, type PlanTyped } from '@/shared/ui/plan/plan-typed';
 import { useAddress } from './use-address';
 import { useOtherSpares } from './use-other-spares';
 
@@ -22,7 +23,8 @@ const settleMs = 400;
 export function usePlanPage() {
   const { topUpOf, insteadOf, initial } = useAddress();
   const draft = useDraft(`plan.${topUpOf ?? insteadOf ?? initial.spareId}`, initial);
-  const typed = draft.value;
+  // A draft of an earlier version may lack a field.
+  const typed: PlanTyped = { ...emptyPlan, ...draft.value };
   const { zone } = useFormats();
   const now = useNow(30_000);
   const today = dayOf(now, zone);
@@ -33,7 +35,9 @@ export function usePlanPage() {
   const spare = spares.data?.find((other) => other.id === typed.spareId) ?? null;
   const meters = useMeters().data;
   const offsetMillivolts = meters?.find((meter) => meter.id === typed.meterId)?.offsetMillivolts ?? 0;
-  const limits = spare === null ? null : { type: spare, offsetMillivolts };
+  const types = useModuleTypes().data;
+  const chemistry = types?.find((type) => type.id === spare?.moduleTypeId)?.chemistry ?? null;
+  const limits = spare === null ? null : { type: spare, chemistry, offsetMillivolts };
   const { request, errors } = requestOf(typed, { zone, today, now, limits });
   // What came whole with the address or the draft is told in a few lines; anything else is still to be typed.
   const [open, setOpen] = useState(request === null);
@@ -62,6 +66,8 @@ export function usePlanPage() {
     today,
     spares: spares.data,
     spare,
+    /** Of the chosen spare; null while it is not known. */
+    chemistry,
     /** The plan's request as it is typed; null while something is missing or wrong. */
     request,
     /** The request that is reckoned, a moment after the last key. */
@@ -80,7 +86,8 @@ export function usePlanPage() {
     open,
     setOpen,
     restored: draft.restored,
-    change: (next: Partial<PlanTyped>) => draft.set((last) => ({ ...last, ...next })),
+    change: (next: Partial<PlanTyped>) =>
+      draft.set((last) => ({ ...last, ...(tellsTarget(next) ? { acceptWideBand: '' } : {}), ...next })),
     choose: setPicked,
     leave: (field: PlanField) => setLeft((last) => ({ ...last, [field]: true })),
     /** Sending was tried: every sentence is shown. */
@@ -89,5 +96,12 @@ export function usePlanPage() {
     clearDraft: draft.clear,
   };
 }
+
+/** The band that somebody took was that of another target. */
+const tellsTarget = (next: Partial<PlanTyped>): boolean =>
+  next.spareId !== undefined ||
+  next.targetVolts !== undefined ||
+  next.targetBy !== undefined ||
+  next.meterId !== undefined;
 
 export type PlanPage = ReturnType<typeof usePlanPage>;

@@ -15,6 +15,7 @@ const looks: Record<AlertKind, AlertLook> = {
   'charge-done': { mark: 'resting', word: 'Current is over' },
   'step-swap': { mark: 'check-due', word: 'A hand is needed' },
   'look-in-due': { mark: 'queued', word: 'Look-in due' },
+  'odd-reading': { mark: 'overdue', word: 'Odd reading' },
 };
 export const lookOf = (alert: AlertDto): AlertLook => looks[alert.kind];
 
@@ -32,7 +33,8 @@ export function whose(alert: AlertDto, personId: string): string {
 export function stepOf(alert: AlertDto, card: ChargeCardDto | undefined): { title: string; path: string } {
   const live = `/charges/${alert.chargeId}`;
   if (alert.kind === 'check-due') return { title: 'Check now', path: `${live}/check` };
-  if (alert.kind === 'look-in-due') return { title: 'Log a reading', path: `${live}/log` };
+  if (alert.kind === 'look-in-due' || alert.kind === 'odd-reading')
+    return { title: 'Log a reading', path: `${live}/log` };
   if (alert.kind === 'overdue' && card && !waitsForSwap(card)) {
     if (card.stage === 'check-due') return { title: 'Check now', path: `${live}/check` };
     if (card.stage === 'queued') return { title: 'Checks before clipping on', path: `${live}/checks` };

@@ -18,14 +18,27 @@ const readingWords = (reading: ReadingDto, marks: Parameters<typeof clipVolts>[1
     .filter(Boolean)
     .join(' · ');
 
+/** With what it was read and where the clips were: 'with Hand meter 1 at the module', 'off the charger’s display'. */
+export function takenWords(
+  reading: Pick<ReadingDto, 'meterId' | 'takenAt'>,
+  meters: readonly { id: string; name: string }[],
+): string {
+  const { meterId, takenAt } = reading;
+  const place = takenAt === null ? '' : ` at the ${takenAt}`;
+  if (meterId === null) return `off the charger’s display${takenAt === null ? '' : `, sensed${place}`}`;
+  return `with ${meters.find((meter) => meter.id === meterId)?.name ?? 'a meter that is gone'}${place}`;
+}
+
 /** All readings, latest first. A corrected one stays, struck through, with who changed it and why. */
 export function ReadingLog({
   charge,
   now,
+  meters,
   onCorrect,
 }: {
   charge: ChargeDto;
   now: number;
+  meters: readonly { id: string; name: string }[];
   onCorrect: (reading: ReadingDto) => void;
 }) {
   const styles = useStyles();
@@ -46,7 +59,7 @@ export function ReadingLog({
               {readingWords(reading, marks)}
             </Txt>
             <Txt kind="small" tone="ink2">
-              {`${moment(Date.parse(reading.at), zone, now, marks)}, ${reading.by.name.split(' ')[0]}${reading.replacedBy ? ', corrected since' : ''}${reading.replaces ? ', a correction' : ''}${reading.reason ? `: ${reading.reason}` : ''}`}
+              {`${moment(Date.parse(reading.at), zone, now, marks)}, ${reading.by.name.split(' ')[0]}, ${takenWords(reading, meters)}${reading.replacedBy ? ', corrected since' : ''}${reading.replaces ? ', a correction' : ''}${reading.reason ? `: ${reading.reason}` : ''}`}
             </Txt>
           </View>
           {reading.mayCorrect && !reading.replacedBy ? (

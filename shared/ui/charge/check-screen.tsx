@@ -3,7 +3,6 @@ import { View } from 'react-native';
 import type { ChemistryId, GroupVerdict } from '@/calc/plan-types';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { MeterDto } from '@/shared/contract/equipment';
-import { moment } from '../format/clock';
 import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { deviation } from '../format/quantities';
@@ -26,6 +25,8 @@ import { verdictWords } from './check-words';
 import { Emergency } from './emergency';
 import { useNextStep, type NextStepPlaces } from './next-step-box';
 import { MeterSelect } from './read-again-sheet';
+import { RestLine } from './rest-line';
+import { earlyCheckWords } from './rest-words';
 import { TopUpCallOut } from './top-up-call-out';
 
 export interface CheckScreenProps {
@@ -67,8 +68,6 @@ export function CheckScreen(props: CheckScreenProps) {
           capacityAh: capacityAh ?? 1,
         });
   const rested = charge.currentEndAt ? (now - Date.parse(charge.currentEndAt)) / 1000 : null;
-  const due = charge.checkDueAt ? Date.parse(charge.checkDueAt) : null;
-  const early = due !== null && now < due;
   const all = verdicts.every((one) => one !== null);
   const outside = verdicts.some((one) => one?.within === false);
   const next = useSaveStep(props, all, outside);
@@ -90,11 +89,7 @@ export function CheckScreen(props: CheckScreenProps) {
           <Work
             {...props}
             verdicts={verdicts}
-            early={
-              early
-                ? `The rest is over at ${moment(due, zone, now, marks)}, in ${duration((due - now) / 1000, 'minute')}. A check before then counts, and the log says that it was early.`
-                : null
-            }
+            early={earlyCheckWords(charge, { now, zone, marks })}
             other={charge.meterId !== null && meterId !== charge.meterId}
             offset={meter && meter.offsetMillivolts !== 0 ? meter.offsetMillivolts / 1000 : null}
           />
@@ -116,6 +111,7 @@ export function CheckScreen(props: CheckScreenProps) {
 
 function Work({
   charge,
+  now,
   form,
   meters,
   verdicts,
@@ -142,6 +138,7 @@ function Work({
     <View style={styles.stack}>
       {early ? <Caution>{early}</Caution> : null}
       <CheckHead charge={charge} verdicts={verdicts} />
+      {charge.rest ? <RestLine charge={charge} now={now} /> : null}
       {at === 'phone' && count > padAbove ? (
         <GroupPad form={groups} count={count} verdictOf={verdictOf} />
       ) : (

@@ -1,6 +1,6 @@
 import type { PlanOption } from '@/calc/plan-types';
 import type { ChargeDto } from '@/shared/contract/charge';
-import type { ModuleTypeDto } from '@/shared/contract/equipment';
+import type { MeterDto, ModuleTypeDto } from '@/shared/contract/equipment';
 import type { PersonDto } from '@/shared/contract/people';
 import type { CardClock } from './card-model';
 import type { LiveAct } from './live-acts';
@@ -16,6 +16,8 @@ export interface LiveScreenProps {
   lagLimitVolts: number | undefined;
   type: ModuleTypeDto | undefined;
   people: readonly PersonDto[] | undefined;
+  /** Of the workshop: a reading names the one it was read with. */
+  meters: readonly Pick<MeterDto, 'id' | 'name'>[];
   mayHandOver: boolean;
   acts: ChargeActs;
   sheet: LiveSheet | null;

@@ -16,9 +16,12 @@ import { HandCallOut } from './hand-call-out';
 import { liveNoteId } from './live-acts';
 import { LiveFacts } from './live-facts';
 import { LiveHead, StageLine } from './live-head';
+import { LearnedPanel } from './learned-panel';
 import { ClipOnLine, CurrentLine, LookInLine } from './live-lines';
 import { isProven, type LiveScreenProps } from './live-props';
+import { OddSeenCallOut } from './odd-seen-call-out';
 import { ReadyFacts } from './ready-panel';
+import { RestLine } from './rest-line';
 import { SeenAndPlan } from './seen-and-plan';
 import { TopUpCallOut } from './top-up-call-out';
 import { OfflineCaution, WaitingReadings } from './waiting-readings';
@@ -48,6 +51,7 @@ export function LiveWork(props: LiveScreenProps) {
       <CardRibbon card={charge} at={at} height={proven ? 56 : 76} stale={knownAt !== null} />
       <Drift {...props} />
       <WhileOffline {...props} />
+      {charge.odd ? <OddSeenCallOut odd={charge.odd} charge={charge} now={at.now} /> : null}
       <Asks {...props} />
       <Outcome {...props} />
       {isOver(charge) ? null : <Emergency charge={charge} chemistry={props.type?.chemistry ?? null} />}
@@ -58,6 +62,7 @@ export function LiveWork(props: LiveScreenProps) {
         </>
       )}
       {isUnderWay(charge) ? <SeenAndPlan charge={charge} now={at.now} /> : null}
+      <LearnedPanel learned={charge.learned} />
       {wide ? (
         <View style={styles.log}>
           <LiveReadings {...props} />
@@ -71,10 +76,11 @@ export function LiveWork(props: LiveScreenProps) {
 const isOver = ({ stage }: ChargeDto): boolean => stage === 'fitted' || stage === 'shelved';
 
 /** All readings, with the way to put one right. */
-export const LiveReadings = ({ charge, at, onGo }: LiveScreenProps) => (
+export const LiveReadings = ({ charge, at, meters, onGo }: LiveScreenProps) => (
   <ReadingLog
     charge={charge}
     now={at.now}
+    meters={meters}
     onCorrect={(reading) => onGo(`/charges/${charge.id}/log?correct=${reading.id}`)}
   />
 );
@@ -143,6 +149,7 @@ function Asks({ charge, at, knownAt, acts, topUp, onSheet }: LiveScreenProps) {
       />
       <LookInLine {...lines} onDone={acts.lookIn} />
       <CurrentLine {...lines} onOffAt={() => onSheet('off-since')} />
+      <RestLine charge={charge} now={at.now} />
       <ClipOnLine {...lines} onChange={() => onSheet('clip-on')} />
     </>
   );

@@ -18,6 +18,8 @@ export interface LogValues {
   groupVolts: string[];
   /** null: read off the charger itself. */
   meterId: string | null;
+  /** Where the clips were read with a meter: 'supply', 'module', or '' where nobody says. */
+  takenAt: string;
   /** Time of day; empty: now. */
   at: string;
   /** Of a correction only. */
@@ -32,6 +34,7 @@ export const emptyLog = (groups: number): LogValues => ({
   celsius: '',
   groupVolts: Array.from({ length: groups }, () => ''),
   meterId: null,
+  takenAt: '',
   at: '',
   reason: '',
 });
@@ -45,6 +48,7 @@ export function logOf(reading: ReadingDto, groups: number, zone: string, marks: 
     celsius: text(reading.celsius),
     groupVolts: Array.from({ length: groups }, (_, group) => text(reading.groupVolts?.[group] ?? null)),
     meterId: reading.meterId,
+    takenAt: reading.takenAt ?? '',
     at: clock(Date.parse(reading.at), zone, marks),
     reason: '',
   };
@@ -93,6 +97,8 @@ export const logSchema = ({
     if (instant === null) issue(noTimeSentence, 'at');
     const read = correctReadingSchema.safeParse({
       ...values,
+      // The charger's own display is known to the server: it reads where the channel senses.
+      takenAt: (values.meterId ?? null) === null ? undefined : values.takenAt || null,
       groupVolts: noGroups || open.length > 0 ? null : values.groupVolts,
       at: instant == null ? undefined : new Date(instant).toISOString(),
     });

@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { useController, useFormState, type UseFormReturn } from 'react-hook-form';
+import { useController, useFormState, useWatch, type UseFormReturn } from 'react-hook-form';
 import { View } from 'react-native';
 import type { ChargeDto, ReadingDto } from '@/shared/contract/charge';
 import { clock, moment } from '../format/clock';
@@ -43,6 +43,7 @@ export interface LogSheetProps {
 }
 
 const chargerDisplay = 'charger';
+const notSaid = 'not-said';
 
 /** A reading at the bench: the three numbers of the charger, and the groups where a meter is at hand. */
 export function LogSheet(props: LogSheetProps) {
@@ -215,23 +216,51 @@ function MeterAndTime({ form, meters, now, correcting }: LogSheetProps) {
     field: { ref, value, onChange, onBlur },
     fieldState,
   } = useController({ control: form.control, name: 'at' });
+  const meterId = useWatch({ control: form.control, name: 'meterId' });
   return (
-    <View style={[styles.pair, styles.part]}>
-      <View style={styles.half}>
-        <ReadWith form={form} meters={meters} />
+    <>
+      <View style={[styles.pair, styles.part]}>
+        <View style={styles.half}>
+          <ReadWith form={form} meters={meters} />
+        </View>
+        <View style={styles.half}>
+          <TimeField
+            label="Read at"
+            value={value}
+            onChangeText={onChange}
+            onBlur={onBlur}
+            ref={ref}
+            placeholder={correcting ? undefined : clock(now, zone, marks)}
+            error={fieldState.error?.message}
+          />
+        </View>
       </View>
-      <View style={styles.half}>
-        <TimeField
-          label="Read at"
-          value={value}
-          onChangeText={onChange}
-          onBlur={onBlur}
-          ref={ref}
-          placeholder={correcting ? undefined : clock(now, zone, marks)}
-          error={fieldState.error?.message}
-        />
-      </View>
-    </View>
+      {meterId === null ? null : (
+        <View style={styles.part}>
+          <TakenAt form={form} />
+        </View>
+      )}
+    </>
+  );
+}
+
+/** A meter may have been held at the supply or at the module: the leads lie in between. */
+function TakenAt({ form }: Pick<LogSheetProps, 'form'>) {
+  const {
+    field: { ref, value, onChange },
+  } = useController({ control: form.control, name: 'takenAt' });
+  return (
+    <Select
+      label="Clips read at"
+      value={value || notSaid}
+      options={[
+        { value: notSaid, label: 'not said' },
+        { value: 'module', label: 'the module' },
+        { value: 'supply', label: 'the supply' },
+      ]}
+      onChange={(chosen) => onChange(chosen === notSaid ? '' : chosen)}
+      ref={ref}
+    />
   );
 }
 

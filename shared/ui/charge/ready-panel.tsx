@@ -79,6 +79,7 @@ export function ReadyFacts({ charge, now }: { charge: ChargeDto; now: number }) 
     facts.push({
       name: 'Rested',
       value: `${duration((Date.parse(check.at) - off) / 1000, 'minute')}${check.celsius === null ? '' : ` at ${celsius(check.celsius)}`}`,
+      note: check.early ? 'checked early' : undefined,
     });
   if (started !== null && ready !== null)
     facts.push({

@@ -13,7 +13,7 @@ function planPath(known: Known): string {
 }
 
 const targetOf = (charge: ChargeDto): Known => ({
-  target: charge.targetTypedVolts,
+  ...(charge.targetSoc === null ? { target: charge.targetTypedVolts } : { soc: charge.targetSoc }),
   repair: charge.repairRef,
   position: charge.modulePosition,
   meter: charge.meterId,
@@ -35,7 +35,8 @@ export const otherSparePath = (charge: ChargeDto): string => planPath(targetOf(c
 /** The same as what the server is asked: how long a top-up takes from the check's own voltages. */
 export const topUpRequest = (charge: ChargeDto) => ({
   spareId: charge.spare.id,
-  targetVolts: charge.targetTypedVolts,
+  targetVolts: charge.targetSoc === null ? charge.targetTypedVolts : null,
+  ...(charge.targetSoc === null ? {} : { targetSoc: charge.targetSoc }),
   toleranceMillivolts: Math.round(charge.toleranceVolts * 1e6) / 1e3,
   meterId: charge.meterId,
   packCelsius: charge.targetCelsius,

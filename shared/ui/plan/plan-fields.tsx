@@ -1,13 +1,15 @@
 import { useState } from 'react';
 import { View } from 'react-native';
+import type { ChemistryId } from '@/calc/plan-types';
 import type { MeterDto } from '@/shared/contract/equipment';
 import type { SpareDto } from '@/shared/contract/spare';
 import { DateTimeField } from '../primitives/date-time-field';
 import { Field } from '../primitives/field';
 import { Link } from '../primitives/link';
+import { SegmentSwitch } from '../primitives/segment-switch';
 import { Select } from '../primitives/select';
 import { makeStyles } from '../theme/make-styles';
-import type { PlanField, PlanTyped } from './plan-typed';
+import { flatChemistries, isBySoc, type PlanField, type PlanTyped } from './plan-typed';
 import { SpareChoice } from './spare-choice';
 
 /** From spare to pack: everything a plan is made of, typed. */
@@ -18,6 +20,7 @@ export function PlanFields({
   meters,
   today,
   toleranceHint,
+  chemistry,
   onChange,
   onLeave,
 }: {
@@ -28,6 +31,8 @@ export function PlanFields({
   meters: readonly MeterDto[] | undefined;
   today: string;
   toleranceHint: string;
+  /** Of the chosen spare; null while it is not known. */
+  chemistry: ChemistryId | null;
   onChange: (change: Partial<PlanTyped>) => void;
   onLeave: (field: PlanField) => void;
 }) {
@@ -44,6 +49,8 @@ export function PlanFields({
     (['toleranceMillivolts', 'packCelsius', 'clipTime'] as const).some(
       (name) => typed[name] !== '' || errors[name] !== undefined,
     );
+  const flat = chemistry !== null && flatChemistries.includes(chemistry);
+  const bySoc = isBySoc(typed, chemistry);
   return (
     <View style={styles.form}>
       <SpareChoice
@@ -53,22 +60,46 @@ export function PlanFields({
         onChange={(spareId) => onChange({ spareId })}
         onLeave={() => onLeave('spareId')}
       />
+      {flat ? (
+        <SegmentSwitch
+          label="The pack is told by"
+          value={bySoc ? 'soc' : 'volts'}
+          segments={[
+            { value: 'volts', label: 'Volts' },
+            { value: 'soc', label: 'State of charge' },
+          ]}
+          onChange={(targetBy) => onChange({ targetBy })}
+        />
+      ) : null}
       <View style={styles.row}>
         <View style={styles.half}>
-          <Field label="Pack rests at" kind="decimal" unit="V" required {...field('targetVolts')} />
+          {bySoc ? (
+            <Field
+              label="Pack stands at"
+              kind="decimal"
+              unit="%"
+              hint="by its own counter"
+              required
+              {...field('targetSoc')}
+            />
+          ) : (
+            <Field label="Pack rests at" kind="decimal" unit="V" required {...field('targetVolts')} />
+          )}
         </View>
-        <View style={styles.half}>
-          <Select
-            label="Read with"
-            value={typed.meterId || 'none'}
-            error={errors.meterId}
-            options={[
-              { value: 'none', label: 'not known' },
-              ...(meters ?? []).map((meter) => ({ value: meter.id, label: meter.name })),
-            ]}
-            onChange={(meterId) => onChange({ meterId: meterId === 'none' ? '' : meterId })}
-          />
-        </View>
+        {bySoc ? null : (
+          <View style={styles.half}>
+            <Select
+              label="Read with"
+              value={typed.meterId || 'none'}
+              error={errors.meterId}
+              options={[
+                { value: 'none', label: 'not known' },
+                ...(meters ?? []).map((meter) => ({ value: meter.id, label: meter.name })),
+              ]}
+              onChange={(meterId) => onChange({ meterId: meterId === 'none' ? '' : meterId })}
+            />
+          </View>
+        )}
       </View>
       <DateTimeField
         label="Ready by"

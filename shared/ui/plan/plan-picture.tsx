@@ -3,6 +3,7 @@ import { View } from 'react-native';
 import type { PlanOption } from '@/calc/plan-types';
 import { ChargePicture } from '../charts/charge-picture';
 import { ChartFrame } from '../charts/chart-frame';
+import { restBandOf } from '../charts/picture-rows';
 import { PictureTable } from '../charts/picture-table';
 import { clock } from '../format/clock';
 import { duration } from '../format/duration';
@@ -27,9 +28,6 @@ export function PlanPicture({
   const { zone, marks } = useFormats();
   const [width, setWidth] = useState(0);
   const toS = Math.max(option.totalS.p90, option.trace.at(-1)?.s ?? 0);
-  const restBand = option.trace.flatMap(({ s, restLowVolts, restHighVolts }) =>
-    restLowVolts === undefined || restHighVolts === undefined ? [] : [{ s, low: restLowVolts, high: restHighVolts }],
-  );
   const at = (s: number) =>
     clipOnAt === null ? (s < 60 ? 'clip on' : duration(s)) : clock(clipOnAt + s * 1000, zone, marks);
   const fewer = width - 40;
@@ -38,7 +36,7 @@ export function PlanPicture({
       {width === 0 || option.trace.length < 2 ? null : (
         <ChartFrame
           heading={heading}
-          note="Volts per group: line at the clips, dashes the rest voltage, mark the target. Below, amps. The comb is when it will be ready."
+          note="Volts per group: line at the clips, dashes the rest voltage with its band, mark the target. Below, amps. The comb is when it will be ready."
           picture={
             <ChargePicture
               width={width}
@@ -46,7 +44,7 @@ export function PlanPicture({
               segments={option.segments}
               band={option.totalS}
               targetVolts={targetVolts}
-              restBand={restBand.length > 1 ? restBand : undefined}
+              restBand={restBandOf(option.trace)}
               ticks={
                 clipOnAt === null
                   ? spanTicks({ toS, width: fewer, stepS: spanStep(toS, fewer) })

@@ -3,7 +3,7 @@ import type { SpareDto } from '@/shared/contract/spare';
 import type { PlanDto, PlanRequest } from '@/shared/contract/plan';
 import { age } from '../format/clock';
 import { useFormats } from '../format/formats';
-import { ampHours, tolerance, volts, voltsNumber } from '../format/quantities';
+import { ampHours, share, tolerance, volts, voltsNumber } from '../format/quantities';
 import { LevelColumn } from '../level-column/level-column';
 import { FactList } from '../primitives/fact-list';
 import { makeStyles } from '../theme/make-styles';
@@ -29,7 +29,7 @@ export function PlanSummary({
   const groups = dto?.plan.startVolts ?? spare.reading?.groupVolts ?? [];
   if (groups.length === 0) return null;
   const many = groups.length > 4;
-  const target = request?.targetVolts ?? spare.shelfVolts ?? spare.chargeLimitVolts;
+  const target = dto?.targetVolts ?? request?.targetVolts ?? spare.shelfVolts ?? spare.chargeLimitVolts;
   const out = dto?.plan.direction === 'discharge';
   const column = (
     <LevelColumn
@@ -59,8 +59,10 @@ export function PlanSummary({
       ? [
           {
             name: 'Target',
-            value: volts(request.targetVolts, marks),
-            note: dto ? tolerance(dto.toleranceMillivolts / 1000) : undefined,
+            value:
+              request.targetVolts === null ? share((request.targetSoc ?? 0) / 100) : volts(request.targetVolts, marks),
+            note:
+              request.targetVolts === null ? 'of charge' : dto ? tolerance(dto.toleranceMillivolts / 1000) : undefined,
           },
         ]
       : []),

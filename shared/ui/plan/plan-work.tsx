@@ -5,7 +5,7 @@ import { CallOut } from '../primitives/call-out';
 import { Rule } from '../primitives/rule';
 import { Txt } from '../primitives/txt';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { HowFarToTrustIt, WhatItTakes } from './plan-trust';
+import { HowFarToTrustIt, LearnedLine, WhatItTakes } from './plan-trust';
 import { PlanWays } from './plan-ways';
 
 /** Every way side by side, and of the chosen one what it takes and how far to trust it. */
@@ -16,6 +16,8 @@ export function PlanWork({
   now,
   old,
   onChoose,
+  withoutLearned,
+  onWithoutLearned,
 }: {
   dto: PlanDto;
   chosen: PlanOption | null;
@@ -24,6 +26,9 @@ export function PlanWork({
   /** The numbers were changed and the next plan is being reckoned. */
   old: boolean;
   onChoose: (optionId: string) => void;
+  /** What closed charges have taught of the times is left out. */
+  withoutLearned: boolean;
+  onWithoutLearned: (without: boolean) => void;
 }) {
   const wide = useBreakpoint() === 'wide';
   return (
@@ -42,7 +47,11 @@ export function PlanWork({
               <WhatItTakes option={chosen} channelNames={(id) => dto.channels[id]?.name ?? ''} />
             </View>
             <View style={wide ? { flex: 1 } : null}>
-              <HowFarToTrustIt option={chosen} plan={dto.plan} />
+              <HowFarToTrustIt
+                option={chosen}
+                plan={dto.plan}
+                learned={<LearnedLine option={chosen} without={withoutLearned} onWithout={onWithoutLearned} />}
+              />
             </View>
           </View>
         </>

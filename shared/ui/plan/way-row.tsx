@@ -10,7 +10,7 @@ import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { ribbonTwin } from '../wait-ribbon/twin';
 import { WaitRibbon } from '../wait-ribbon/wait-ribbon';
-import { finishNames, optionTitle, wayNames } from './way-words';
+import { finishOf, optionTitle, wayNames } from './way-words';
 
 /** Letters that a way's name and its channel may have together on the first line of a phone. */
 const firstLineLetters = 40;
@@ -96,7 +96,7 @@ export function WayRow({
       </Txt>
       {option.way === 'resistor' ? null : (
         <Txt tone="ink2" style={styles.finish} numberOfLines={1}>
-          {finishNames[option.finish]}
+          {finishOf(option)}
         </Txt>
       )}
       <View style={styles.grow} />

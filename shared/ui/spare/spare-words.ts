@@ -36,6 +36,10 @@ export const capacityBandOf = (spare: Pick<SpareDto, 'usedCapacityAh' | 'capacit
   high: spare.usedCapacityAh + BAND_SD * spare.capacitySdAh,
 });
 
+/** The same of one figure that was typed or found. */
+export const figureBandOf = ({ ampHours, sdAh }: { ampHours: number; sdAh: number }) =>
+  capacityBandOf({ usedCapacityAh: ampHours, capacitySdAh: sdAh });
+
 /** Highest minus lowest group, V. */
 export const apartVolts = (groups: readonly number[]): number =>
   groups.length === 0 ? 0 : Math.max(...groups) - Math.min(...groups);

@@ -71,6 +71,10 @@ export function ChannelFields({
         {number('maxWatts', 'W', 'empty: no limit of its own')}
         {number('leadMilliohm', 'mΩ', 'both leads together')}
         {number('displayStepMillivolts', 'mV', 'last digit of its voltmeter')}
+        {number('displayStepAmps', 'A', 'its amps are set in these')}
+        {number('dutyPercent', '%', 'of the time; empty: all')}
+        {number('deratingAboveCelsius', '°C', 'in the room; empty: never')}
+        {number('deratingPercent', '%', 'of its current')}
       </FieldGrid>
       <View style={styles.senses}>
         <Txt kind="label">{names.senses}</Txt>
@@ -89,6 +93,13 @@ export function ChannelFields({
         )}
       </View>
       <View>
+        <BoundCheck
+          form={form}
+          name={at('leadsMeasured')}
+          title={names.leadsMeasured}
+          meaning="Else they are a guess, and the band is wider until readings tell."
+          readOnly={readOnly}
+        />
         <BoundCheck form={form} name={at('adjustableVolts')} title={names.adjustableVolts} readOnly={readOnly} />
         <BoundCheck
           form={form}

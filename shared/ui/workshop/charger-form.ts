@@ -14,6 +14,11 @@ export interface ChannelTexts {
   senses: 'own-terminals' | 'module';
   leadMilliohm: string;
   displayStepMillivolts: string;
+  displayStepAmps: string;
+  leadsMeasured: boolean;
+  deratingAboveCelsius: string;
+  deratingPercent: string;
+  dutyPercent: string;
   singleGroup: boolean;
   canDischarge: boolean;
   dischargeAmps: string;
@@ -40,6 +45,11 @@ export const channelFieldNames: Readonly<Record<Exclude<keyof ChannelTexts, 'id'
   senses: 'Senses at',
   leadMilliohm: 'Leads',
   displayStepMillivolts: 'Display step',
+  displayStepAmps: 'Current step',
+  leadsMeasured: 'Leads are measured',
+  deratingAboveCelsius: 'Less above',
+  deratingPercent: 'Then gives',
+  dutyPercent: 'Gives current',
   singleGroup: 'Can charge a single group',
   canDischarge: 'Can discharge',
   dischargeAmps: 'Discharge current',
@@ -59,6 +69,11 @@ export const emptyChannel: ChannelTexts = {
   senses: 'own-terminals',
   leadMilliohm: '5',
   displayStepMillivolts: '10',
+  displayStepAmps: '',
+  leadsMeasured: false,
+  deratingAboveCelsius: '',
+  deratingPercent: '',
+  dutyPercent: '',
   singleGroup: false,
   canDischarge: false,
   dischargeAmps: '',
@@ -76,6 +91,12 @@ const channelTexts = (channel: ChannelDto, marks: LocaleMarks): ChannelTexts => 
   senses: channel.senses,
   leadMilliohm: typedNumber(channel.leadMilliohm, 0, marks),
   displayStepMillivolts: typedNumber(channel.displayStepMillivolts, 0, marks),
+  displayStepAmps: typedNumber(channel.displayStepAmps, 0, marks),
+  // Nobody has said: as given, as the plan takes it.
+  leadsMeasured: channel.leadsMeasured ?? true,
+  deratingAboveCelsius: typedNumber(channel.deratingAboveCelsius, 0, marks),
+  deratingPercent: typedNumber(channel.deratingPercent, 0, marks),
+  dutyPercent: typedNumber(channel.dutyPercent, 0, marks),
   singleGroup: channel.singleGroup,
   canDischarge: channel.canDischarge,
   dischargeAmps: typedNumber(channel.dischargeAmps, 0, marks),

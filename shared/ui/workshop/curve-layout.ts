@@ -1,4 +1,4 @@
-import { chemistryParameters, socAtVolts, voltsAtSoc, type ChemistryParameters } from '@/calc';
+import { chemistryParameters, socAtVolts, voltsAtSoc, type ChemistryParameters, type OcvTable } from '@/calc';
 import type { chemistryIds } from '@/shared/contract/equipment';
 import { voltLines, fromZero } from '../charts/axis-steps';
 
@@ -12,6 +12,14 @@ export interface CurveInput {
   dischargeLimitVolts: number | null;
   floorVolts: number | null;
   shelfVolts: number | null;
+  /** The type's own curve, or a published one that was chosen; null or left out: the chemistry's. */
+  curve?: OcvTable | null;
+}
+
+/** The chemistry's usual values with the curve that is drawn. */
+export function drawnParameters({ chemistry, curve }: Pick<CurveInput, 'chemistry' | 'curve'>): ChemistryParameters {
+  const usual = chemistryParameters(chemistry);
+  return curve ? { ...usual, curve } : usual;
 }
 
 /** The volts that `around` is worth, V to both sides together: 5 mV. */
@@ -39,7 +47,7 @@ export interface Worth {
 }
 
 /** What 5 mV is worth in the middle of each tenth of the charge. */
-export function worthByTenth(parameters: ChemistryParameters): Worth[] {
+export function worthByTenth(parameters: Pick<ChemistryParameters, 'curve'>): Worth[] {
   return TENTHS.map((fromSoc) => ({
     fromSoc,
     toSoc: fromSoc + 0.1,
@@ -78,7 +86,7 @@ export interface CurveDrawing {
 
 /** Lays out curve and bars. Pixels; the bars have their own origin. */
 export function layoutCurve(input: CurveInput, width: number, voltsHeight: number, barsHeight: number): CurveDrawing {
-  const parameters = chemistryParameters(input.chemistry);
+  const parameters = drawnParameters(input);
   const { curve } = parameters;
   const left = 46;
   const inside = Math.max(1, width - left - 6);
@@ -94,7 +102,11 @@ export function layoutCurve(input: CurveInput, width: number, voltsHeight: numbe
   const [low, high] = [Math.min(...drawn) - 0.08 * span, Math.max(...drawn) + 0.08 * span];
   const toY = (volts: number) => voltsHeight - ((volts - low) / (high - low)) * voltsHeight;
   const point = (soc: number, volts: number) => `${toX(soc).toFixed(1)} ${toY(volts).toFixed(1)}`;
-  const path = Array.from({ length: 201 }, (_, i) => i / 200).map((soc) => point(soc, voltsAtSoc(curve, soc)));
+  // Only where there are points: what lies beyond is nobody's measurement.
+  const [first, last] = [curve.soc[0] ?? 0, curve.soc.at(-1) ?? 1];
+  const path = Array.from({ length: 201 }, (_, i) => first + (i / 200) * (last - first)).map((soc) =>
+    point(soc, voltsAtSoc(curve, soc)),
+  );
   const few = curve.soc.length <= 25;
   const worths = worthByTenth(parameters);
   const area = flattest(worths);
@@ -141,8 +153,8 @@ export function layoutCurve(input: CurveInput, width: number, voltsHeight: numbe
 }
 
 /** Where a voltage says most and least of the charge, above the steep foot; for the sentence under the picture. */
-export function extremes(chemistry: Chemistry): { flat: Worth; steep: Worth } {
-  const upper = worthByTenth(chemistryParameters(chemistry)).filter(({ fromSoc }) => fromSoc >= 0.2);
+export function extremes(parameters: Pick<ChemistryParameters, 'curve'>): { flat: Worth; steep: Worth } {
+  const upper = worthByTenth(parameters).filter(({ fromSoc }) => fromSoc >= 0.2);
   const by = (better: (a: number, b: number) => boolean) =>
     upper.reduce((best, each) => (better(each.share, best.share) ? each : best));
   return { flat: by((a, b) => a > b), steep: by((a, b) => a < b) };

@@ -1,7 +1,7 @@
 import { useMemo } from 'react';
 import { View } from 'react-native';
 import { Circle, G, Path, Rect, Svg, Text as SvgText } from 'react-native-svg';
-import { chemistryParameters, voltsAtSoc } from '@/calc';
+import { voltsAtSoc } from '@/calc';
 import { Grid } from '../charts/charge-picture';
 import { ChartFrame } from '../charts/chart-frame';
 import { useFormats } from '../format/formats';
@@ -13,7 +13,7 @@ import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 import { useTheme } from '../theme/theme';
 import { faceStacks } from '../theme/tokens';
-import { extremes, layoutCurve, worthShare, type CurveInput } from './curve-layout';
+import { drawnParameters, extremes, layoutCurve, worthShare, type CurveInput } from './curve-layout';
 
 /** Heights of the two panels and what stands between and under them, px. */
 const VOLTS = 300;
@@ -21,13 +21,13 @@ const BARS = 92;
 const GAP = 58;
 
 /**
- * The chemistry's rest voltage against its charge, with the limits as they are typed, and what 5 mV is worth along it.
+ * The rest voltage of the type's curve against its charge, with the limits as they are typed, and what 5 mV is worth along it.
  * Loads late: it brings the curves of `calc`.
  */
 export function CurvePicture(input: CurveInput) {
   const { marks } = useFormats();
-  const parameters = chemistryParameters(input.chemistry);
-  const { flat, steep } = extremes(input.chemistry);
+  const parameters = drawnParameters(input);
+  const { flat, steep } = extremes(parameters);
   const ah = input.ratedAh;
   const worth = (shareOf: number) =>
     ah === null

@@ -1,6 +1,7 @@
 import { View } from 'react-native';
 import { chemistryIds, chemistryNames, resistanceKinds } from '@/shared/contract/equipment';
 import { BoundField, BoundSelect, type TypedForm } from '../forms/bound';
+import { Txt } from '../primitives/txt';
 import { FieldGrid, FormPart } from './field-grid';
 import { resistanceNames, typeFieldNames as names, type TypeTexts } from './type-form';
 
@@ -53,7 +54,10 @@ export function TypeFields({ form, readOnly }: { form: TypedForm<TypeTexts>; rea
           {number('maxDischargeAmps', 'A')}
           {number('minChargeCelsius', '°C')}
           {number('maxChargeCelsius', '°C')}
+          {number('coldCurrentPercent', '%', 'of the current; empty: all')}
+          {number('warmCurrentPercent', '%', 'of the current; empty: all')}
         </FieldGrid>
+        <FieldGrid>{number('prechargeBelowVolts', 'V', 'a group under it comes up at C/10 first')}</FieldGrid>
       </FormPart>
       <FormPart title="Kept here" note="Left empty, the usual value of the chemistry is taken and the band is wider.">
         <FieldGrid>
@@ -68,6 +72,15 @@ export function TypeFields({ form, readOnly }: { form: TypedForm<TypeTexts>; rea
             options={kinds}
             readOnly={readOnly}
           />
+        </FieldGrid>
+        <Txt kind="small" tone="ink2">
+          Two pulses of the same current tell how fast the voltage follows: all four numbers, or none.
+        </Txt>
+        <FieldGrid two>
+          {number('pulseShortS', 's', 'as 0.5 s')}
+          {number('pulseShortMilliohm', 'mΩ', 'of one group')}
+          {number('pulseLongerS', 's', 'as 30 s')}
+          {number('pulseLongerMilliohm', 'mΩ', 'of one group')}
         </FieldGrid>
         <BoundField form={form} name="note" label={names.note} multiline lines={2} readOnly={readOnly} />
       </FormPart>

@@ -37,6 +37,14 @@ export const typeFieldNames: Readonly<Record<keyof ModuleTypeInput, string>> = {
   shelfVolts: 'Shelf voltage',
   selfDischargePercentPerMonth: 'Self-discharge',
   note: 'Note',
+  curveId: 'Curve',
+  pulseShortS: 'Short pulse',
+  pulseShortMilliohm: 'It sees',
+  pulseLongerS: 'Longer pulse',
+  pulseLongerMilliohm: 'That sees',
+  coldCurrentPercent: 'Under 10 °C',
+  warmCurrentPercent: 'Over 45 °C',
+  prechargeBelowVolts: 'Precharge under',
 };
 
 const leastDecimals: Partial<Record<keyof ModuleTypeInput, number>> = {
@@ -44,6 +52,7 @@ const leastDecimals: Partial<Record<keyof ModuleTypeInput, number>> = {
   dischargeLimitVolts: 2,
   floorVolts: 2,
   shelfVolts: 2,
+  prechargeBelowVolts: 2,
 };
 
 const empty: TypeTexts = {

@@ -2,7 +2,7 @@ import { fireEvent, screen, waitFor } from '@testing-library/react';
 import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Check from '@/app/(workshop)/charges/[id]/check';
-import { charge, iso } from '../../shared/ui/charge/charges';
+import { at, charge, iso } from '../../shared/ui/charge/charges';
 import { draw, emptyDevice, input, press, problem, serverWith } from './bench-of';
 
 vi.mock('expo-router', async (original) => ({
@@ -17,6 +17,7 @@ const verdict = (within: boolean) => ({
   by: { id: 'ines', name: 'Ines Marlow' },
   groupVolts: [],
   celsius: null,
+  early: false,
   verdict: { within, groups: [], spreadVolts: 0.002, worstGroup: 0 },
 });
 const type = async (label: string, text: string) => {
@@ -31,7 +32,10 @@ beforeEach(() => {
   vi.mocked(router.push).mockClear();
   vi.mocked(router.replace).mockClear();
 });
-afterEach(() => vi.unstubAllGlobals());
+afterEach(() => {
+  vi.useRealTimers();
+  vi.unstubAllGlobals();
+});
 
 describe('the check after the rest', () => {
   it('has what to do at smoke one tap away', async () => {
@@ -133,6 +137,27 @@ describe('the check after the rest', () => {
     ).toBeTruthy();
     expect((await input('Group 3')).value).toBe('3.905');
     expect(router.replace).not.toHaveBeenCalled();
+  });
+
+  it('says where each group settles, and that a check 18 min before the minimum rest is over is marked early', async () => {
+    const band = (p50: number) => ({ p10: p50 - 0.002, p50, p90: p50 + 0.002 });
+    serverWith({
+      ...due,
+      currentEndAt: iso('13:00'),
+      checkDueAt: iso('13:40'),
+      rest: {
+        settledVolts: [3.905, 3.906, 3.903].map(band),
+        chance: 0.94,
+        restedEnough: true,
+        enoughAt: iso('13:40'),
+        readings: 7,
+      },
+    });
+    vi.setSystemTime(at('13:42'));
+    draw(<Check />);
+    expect(await screen.findByText(/G2 settles at 3\.906\sV \(3\.904–3\.908\)/)).toBeTruthy();
+    expect(screen.getByText('Rested enough since 13:40: the check may come now.')).toBeTruthy();
+    expect(screen.getByText(/The minimum rest is over in 18\smin: .*marked early/)).toBeTruthy();
   });
 
   it('keeps what is typed over a reload', async () => {

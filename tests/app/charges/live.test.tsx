@@ -141,15 +141,64 @@ describe('a running charge', () => {
       id: 'r2',
       terminalVolts: 11.29,
       replaces: 'r1',
+      meterId: 'm1',
       reason: 'Two digits the wrong way round',
     });
     serverWith(charge('charging', { ...mine, readings: [old, next] }));
     draw(<Live />);
     expect(await screen.findByText('11.92 V · 10.0 A · 24 °C')).toBeTruthy();
-    expect(screen.getByText(/Ines, corrected since$/)).toBeTruthy();
+    expect(screen.getByText(/Ines, off the charger’s display, corrected since$/)).toBeTruthy();
     expect(screen.getByText('11.29 V · 10.0 A · 24 °C')).toBeTruthy();
-    expect(screen.getByText(/Ines, a correction: Two digits the wrong way round$/)).toBeTruthy();
+    expect(
+      await screen.findByText(/Ines, with Hand meter 1, a correction: Two digits the wrong way round$/),
+    ).toBeTruthy();
     expect(screen.getAllByRole('button', { name: /^Correct the reading/ })).toHaveLength(1);
+  });
+});
+
+describe('what the readings say', () => {
+  it('an odd one stands with what was seen, what was expected and what to check first', async () => {
+    serverWith(
+      charge('charging', {
+        ...mine,
+        readings: [reading('13:06'), reading('13:36', { amps: 3.1 })],
+        odd: {
+          kind: 'stuck-current',
+          quantity: 'amps',
+          group: null,
+          seen: 3.1,
+          expected: 0.4,
+          readings: 2,
+          since: iso('13:30'),
+        },
+      }),
+    );
+    draw(<Live />);
+    const box = within(await screen.findByRole('region', { name: 'Odd reading' }));
+    expect(box.getByText(/^Current has stood at 3\.1\sA\. 0\.4\sA was expected\.$/)).toBeTruthy();
+    expect(box.getByText(/warmth at the groups, then what A2 is set to/)).toBeTruthy();
+    expect(box.getByText(/2 readings in a row since .*13:30; nothing is learned from them/)).toBeTruthy();
+  });
+
+  it('what they taught stands beside what was known; a charge that has taught nothing shows no table', async () => {
+    const learned = {
+      capacityAh: { mean: 60, sd: 0.78, priorMean: 62, priorSd: 3.9 },
+      longOhm: null,
+      leadOhm: null,
+    };
+    serverWith(charge('charging', { ...mine, learned }));
+    const { unmount } = draw(<Live />);
+    // On a phone the two bands stand under each other: side by side they would run into one another.
+    const list = within(await screen.findByRole('list', { name: 'Learned from this charge' }));
+    expect(list.getAllByRole('listitem').map((row) => row.textContent)).toEqual([
+      'Capacity of a group, Ahbefore 62.0 (57.0–67.0)60.0 (59.0–61.0)',
+    ]);
+    unmount();
+    emptyDevice();
+    serverWith(charge('charging', mine));
+    draw(<Live />);
+    await screen.findByText('No reading yet. The times are the plan’s until the first one.');
+    expect(screen.queryByText('Learned from this charge')).toBeNull();
   });
 });
 
@@ -195,6 +244,7 @@ describe('after the current', () => {
       by: mine.person,
       groupVolts: [3.906, 3.898, 3.905],
       celsius: 21,
+      early: false,
       verdict: { within: false, groups, spreadVolts: 0.008, worstGroup: 1 },
     };
     const due = charge('check-due', { ...mine, checkDueAt: iso('13:30'), restChecks: [check] });

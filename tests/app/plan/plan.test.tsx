@@ -1,4 +1,4 @@
-import { cleanup, fireEvent, screen, waitFor } from '@testing-library/react';
+import { cleanup, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Plan from '@/app/(workshop)/plan';
@@ -22,6 +22,7 @@ const planned: PlanDto = {
   plan: planCharge(planInput({ channels: [channel('A1')] })),
   plannedAt: new Date().toISOString(),
   clipOnAt: new Date().toISOString(),
+  targetVolts: 3.92,
   toleranceMillivolts: 5,
   channels: { 'id-A1': { name: 'A1', chargerName: 'Supply A', freeAt: null } },
 };
@@ -34,6 +35,7 @@ beforeEach(() => {
   Object.assign(server.answers, {
     'GET /api/spares': () => Response.json([spare]),
     'GET /api/meters': () => Response.json(meters),
+    'GET /api/module-types': () => Response.json([{ id: 't1', chemistry: 'nmc' }]),
     'GET /api/workshop': () => Response.json({ id: 'w1', toleranceMillivolts: 5 }),
     'POST /api/plans': () => Response.json(planned),
   });
@@ -97,6 +99,69 @@ describe('planning a charge', () => {
     expect(router.push).toHaveBeenCalledWith('/charges/c3');
     expect((await input('Pack rests at')).value).toBe('3.92');
     expect(await press('Checks before clipping on')).toBeTruthy();
+  });
+
+  it('says what 14 closed charges have taught, and reckons and keeps without it where that is taken off', async () => {
+    const text = 'Learned from 14 charges: 6 % longer than reckoned.';
+    server.answers['POST /api/plans'] = (body) =>
+      Response.json(
+        (body as { withoutLearned?: boolean }).withoutLearned
+          ? planned
+          : {
+              ...planned,
+              plan: {
+                ...planned.plan,
+                options: planned.plan.options.map((option) => ({
+                  ...option,
+                  timeFactor: { mean: 1.06, sd: 0.03, charges: 14 },
+                  timeFactorText: text,
+                })),
+              },
+            },
+      );
+    server.answers['POST /api/charges'] = () => Response.json({ id: 'c7', number: 'C-0007', rev: 1 });
+    await type('Pack rests at', '3.92');
+    expect(await screen.findByText(text)).toBeTruthy();
+    fireEvent.click(await press('without what was learned'));
+    expect(await press('with what was learned')).toBeTruthy();
+    await waitFor(() => expect(screen.queryByText(text)).toBeNull());
+    await reckoned();
+    fireEvent.click(checks());
+    await waitFor(() => expect(kept()).toHaveLength(1));
+    expect(kept()[0]!.body).toMatchObject({ withoutLearned: true });
+  });
+
+  it('refused on the flat of the curve shows the band it would have, and plans it only once that is taken', async () => {
+    const text = 'The curve is flat at 3.300 V: that may be 35 % to 62 % of charge.';
+    const plateau = {
+      totalS: { p10: 12_600, p50: 18_000, p90: 32_400 },
+      soc: { p10: 0.35, p50: 0.48, p90: 0.62 },
+    };
+    server.answers['POST /api/plans'] = (body) =>
+      Response.json(
+        (body as { acceptWideBand?: boolean }).acceptWideBand
+          ? planned
+          : {
+              ...planned,
+              plan: {
+                ...planned.plan,
+                options: [],
+                refusals: [{ code: 'numbers', group: null, text, plateau }],
+              },
+            },
+      );
+    await type('Pack rests at', '3.300');
+    const box = within(await screen.findByRole('alert', { name: 'The voltage says too little here' }));
+    expect(box.getByText('(3:30–9:00)')).toBeTruthy();
+    expect(box.getByText(/^\(35–62\s%\)$/)).toBeTruthy();
+    expect(screen.queryByRole('button', { name: 'Quarantine' })).toBeNull();
+    fireEvent.click(box.getByRole('button', { name: 'Plan it all the same' }));
+    await screen.findByText('Ways, soonest first');
+    expect(server.writes().at(-1)!.body).toMatchObject({ targetVolts: 3.3, acceptWideBand: true });
+    // Another target has another band: what was taken counts for the old one only.
+    await type('Pack rests at', '3.310');
+    expect(await screen.findByRole('alert', { name: 'The voltage says too little here' })).toBeTruthy();
+    expect(server.writes().at(-1)!.body).not.toHaveProperty('acceptWideBand');
   });
 
   it('made again from a charge keeps the new one in place of it', async () => {

@@ -19,6 +19,7 @@ export const spareOf = (more: Partial<SpareDto> = {}): SpareDto => ({
   healthPercent: null,
   usedCapacityAh: 66,
   capacitySdAh: 2,
+  capacities: [],
   quarantine: null,
   charge: null,
   reading: null,

@@ -22,6 +22,7 @@ const ready = charge('ready', {
       by: { id: 'ines', name: 'Ines Marlow' },
       groupVolts: [3.906, 3.905, 3.902],
       celsius: 21,
+      early: false,
       verdict: {
         within: true,
         groups: [3.906, 3.905, 3.902].map((volts, group) => ({

@@ -1,7 +1,7 @@
 import { fireEvent, screen, waitFor, within } from '@testing-library/react';
-import { afterEach, beforeEach, expect, it, vi } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Spare from '@/app/(workshop)/spares/[id]/index';
-import type { SpareDto } from '@/shared/contract/spare';
+import type { SpareCapacityDto, SpareDto } from '@/shared/contract/spare';
 import { PlanFields } from '@/shared/ui/plan/plan-fields';
 import { emptyPlan } from '@/shared/ui/plan/plan-typed';
 import { SpareRow } from '@/shared/ui/spare/spare-row';
@@ -32,6 +32,7 @@ const spare: SpareDto = {
   where: 'charge',
   usedCapacityAh: 61,
   capacitySdAh: 1,
+  capacities: [],
   quarantine: null,
   charge: { id: 'c1', title: 'R-2418', stage: 'queued', rev: 3 },
   reading: {
@@ -143,6 +144,7 @@ it('says so in the list and where a plan chooses its spare', async () => {
         meters={[]}
         today="2026-06-09"
         toleranceHint="5"
+        chemistry="nmc"
         onChange={() => {}}
         onLeave={() => {}}
       />
@@ -157,4 +159,68 @@ it('shows the figures of its own charge while that is under way, whatever was re
   draw(<Spare />);
   await press('Open the charge');
   expect(screen.queryByText('Read before R-2406.')).toBeNull();
+});
+
+describe('what a charge has found of the capacity', () => {
+  const told = {
+    at: '2026-06-08T10:00:00.000Z',
+    by: { id: 'p1', name: 'Petra Aldwin' },
+    apart: null,
+    chargeId: null,
+  };
+  const found: SpareCapacityDto = {
+    ...told,
+    id: 'k2',
+    ampHours: 54.2,
+    sdAh: 0.8,
+    source: 'two readings',
+    state: 'found',
+    apart: 5.3,
+    chargeId: 'c9',
+  };
+  const typed: SpareCapacityDto = { ...told, id: 'k1', ampHours: 61, sdAh: 1, source: 'typed', state: 'used' };
+  const withFinding: SpareDto = { ...spare, where: 'shelf', charge: null, capacities: [found, typed] };
+
+  it('stands with its standard deviation in the history, and asks to be taken or left with both bands', async () => {
+    stockOf(withFinding);
+    draw(<Spare />);
+    // 10 and 90 % of a normal spread lie 1.2816 standard deviations out: 54.2 ± 1.03 and 61 ± 1.28.
+    expect(await screen.findByText(/give 54\.2 \(53\.2–55\.2\), plans go by 61\.0 \(59\.7–62\.3\)/)).toBeTruthy();
+    const rows = within(await screen.findByRole('list', { name: 'Capacity, told so far' })).getAllByRole('listitem');
+    expect(rows.map((row) => row.textContent?.replaceAll('\u00a0', ' '))).toEqual([
+      expect.stringMatching(/read before and after a charge, Petra, waits for an answer.*54\.2 Ah±0\.8 Ah$/),
+      expect.stringMatching(/typed, Petra.*61\.0 Ah±1\.0 Ah$/),
+    ]);
+  });
+
+  it('is taken with one write at the revision that was seen', async () => {
+    const server = stockOf(withFinding);
+    const taken: SpareDto = {
+      ...withFinding,
+      usedCapacityAh: 54.2,
+      capacitySdAh: 0.8,
+      capacities: [{ ...found, state: 'used' }, typed],
+      rev: 6,
+    };
+    server.answers['POST /api/spares/s1/capacities/k2'] = () => {
+      server.becomes(taken);
+      return Response.json(taken);
+    };
+    draw(<Spare />);
+    fireEvent.click(await press(/^Take 54\.2/));
+    await waitFor(() => expect(screen.queryByText(/Take 54\.2/)).toBeNull());
+    expect(server.writes()).toEqual([
+      { method: 'POST', path: '/api/spares/s1/capacities/k2', rev: '"5"', body: { answer: 'take' } },
+    ]);
+  });
+
+  it('stays open with the sentence where somebody else has changed the spare, and reads it again', async () => {
+    const server = stockOf(withFinding);
+    server.answers['POST /api/spares/s1/capacities/k2'] = () =>
+      problem(412, 'Bram Teal changed it at 13:41.', { code: 'stale', present: withFinding });
+    draw(<Spare />);
+    fireEvent.click(await press('Leave it'));
+    expect(await screen.findByText(/^Bram Teal changed it/)).toBeTruthy();
+    await waitFor(() => expect(server.sent.filter(({ path }) => path === '/api/spares/s1').length).toBeGreaterThan(1));
+  });
 });

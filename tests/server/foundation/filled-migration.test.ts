@@ -26,12 +26,26 @@ beforeAll(async () => {
 });
 afterAll(() => bench.server.close());
 
+/** What the migrations since the first add. */
+const comeAndGo = {
+  tables: ['spare_capacity'],
+  columns: [
+    ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],
+    ...['curve_id', 'own_curve', 'pulse_short_s', 'pulse_short_milliohm', 'pulse_longer_s', 'pulse_longer_milliohm'],
+    ...['cold_current_percent', 'warm_current_percent', 'precharge_below_volts'],
+    ...['display_step_amps', 'leads_measured', 'derating_above_celsius', 'derating_percent', 'duty_percent'],
+  ],
+};
+
 /** Every row of every table but the columns that come and go. */
 async function everything(): Promise<Record<string, unknown[]>> {
   const rows: Record<string, unknown[]> = {};
   for (const { tableName } of dataSource.entityMetadatas) {
+    if (comeAndGo.tables.includes(tableName)) continue;
     const found = (await dataSource.query(`SELECT * FROM ${tableName} ORDER BY id`)) as Record<string, unknown>[];
-    rows[tableName] = found.map(({ neighbour_spare_id: _gone, passed_at: _too, ...row }) => row);
+    rows[tableName] = found.map((row) =>
+      Object.fromEntries(Object.entries(row).filter(([column]) => !comeAndGo.columns.includes(column))),
+    );
   }
   return rows;
 }

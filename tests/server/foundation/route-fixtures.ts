@@ -119,6 +119,11 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/module-types/:id': technician((f) => ({ params: { id: f.typeId } })),
   'PATCH /api/module-types/:id': manager((f) => ({ params: { id: f.typeId }, body: moduleTypeForm({ note: 'new' }) })),
   'DELETE /api/module-types/:id': manager((f) => ({ params: { id: f.spareTypeId } })),
+  'PUT /api/module-types/:id/curve': manager((f) => ({
+    params: { id: f.typeId },
+    body: { csv: Array.from({ length: 11 }, (_, at) => `${at * 10};${3 + at / 10}`).join('\n') },
+  })),
+  'DELETE /api/module-types/:id/curve': manager((f) => ({ params: { id: f.typeId } })),
   'GET /api/chargers': technician(),
   'POST /api/chargers': manager((f) => ({ body: charger(f) })),
   'GET /api/chargers/:id': technician((f) => ({ params: { id: f.chargerId } })),
@@ -151,6 +156,10 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { reason: 'Dropped.', condition: 'dented', shelfPlace: 'box', charge: null },
   })),
   'POST /api/spares/:id/release': foreman((f) => ({ params: { id: f.spareId } })),
+  'POST /api/spares/:id/capacities/:capacityId': technician((f) => ({
+    params: { id: f.spareId, capacityId: f.capacityId },
+    body: { answer: 'take' },
+  })),
   'GET /api/spares/:id/history': technician((f) => ({ params: { id: f.spareId } })),
 
   'POST /api/estimates': {

@@ -46,6 +46,10 @@ describe('when an alert rings', () => {
     expect(rings(alert('charge-done', { level: 'tell' }))).toEqual([0]);
     expect(rings(alert('look-in-due', { level: 'tell' }))).toEqual([0]);
   });
+  it('an odd reading rings once, for everybody who is there', () => {
+    expect(rings(alert('odd-reading', { level: 'alarm' }))).toEqual([0]);
+    expect(rings(alert('odd-reading', { level: 'alarm' }), 'bram')).toEqual([0]);
+  });
   it('passed on after 10 min it rings for the receiver from then, at 0, 5 and 15 min', () => {
     const passed = { ...alert('check-due'), passedAt: new Date(raised + 600_000).toISOString() };
     expect(rings(passed)).toEqual([600, 900, 1500]);

@@ -3,7 +3,7 @@ import type { TracePlanPoint } from '@/calc/plan-types';
 import { fromZero, lineDecimals, voltLines } from '@/shared/ui/charts/axis-steps';
 import { layoutBars } from '@/shared/ui/charts/bar-layout';
 import { layoutPicture } from '@/shared/ui/charts/charge-picture-layout';
-import { pictureRows } from '@/shared/ui/charts/picture-rows';
+import { pictureRows, restBandOf } from '@/shared/ui/charts/picture-rows';
 
 describe('grid lines', () => {
   it('stand each 0.1 V on 3.62–3.98 V and each 0.2 V on 3.55–4.05 V, never more than four', () => {
@@ -99,6 +99,22 @@ describe('table beside the picture', () => {
       [5400, 3.9, 0],
       [7200, 3.9, 0],
     ]);
+  });
+
+  it('brings the band of the rest voltage along, halfway between two points halfway between theirs', () => {
+    const banded = trace.map((point, at) => ({
+      ...point,
+      restLowVolts: 3.5 + at * 0.1,
+      restHighVolts: 3.7 + at * 0.1,
+    }));
+    const step = (banded[1]!.s - banded[0]!.s) / 2;
+    expect(pictureRows(banded, step)[1]!.restBand).toEqual({
+      low: expect.closeTo(3.55, 9) as number,
+      high: expect.closeTo(3.75, 9) as number,
+    });
+    expect(restBandOf(banded)).toHaveLength(banded.length);
+    expect(pictureRows(trace, 1800)[1]!.restBand).toBeNull();
+    expect(restBandOf(trace)).toBeUndefined();
   });
 
   it('is empty without a trace', () => {

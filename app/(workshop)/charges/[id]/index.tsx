@@ -5,6 +5,7 @@ import { useCharge } from '@/shared/client/charges';
 import { serverTimeOf, useNow } from '@/shared/client/clock';
 import { useDraft } from '@/shared/client/drafts';
 import { useLink } from '@/shared/client/link';
+import { useMeters } from '@/shared/client/meters';
 import { useModuleType } from '@/shared/client/module-types';
 import { usePeople } from '@/shared/client/people';
 import { usePlan } from '@/shared/client/plans';
@@ -83,6 +84,7 @@ function Live({
   };
   const acts = useChargeActs(charge, done, onRead);
   const people = usePeople().data;
+  const meters = useMeters().data ?? [];
   const workshop = useWorkshop().data;
   const type = useModuleType(charge.moduleTypeId).data;
   const queue = useReadingQueue(charge.id);
@@ -108,6 +110,7 @@ function Live({
       lagLimitVolts={workshop === undefined ? undefined : workshop.lagLimitMillivolts / 1000}
       type={type}
       people={people}
+      meters={meters}
       mayHandOver={maySendOthers || charge.person === null || charge.person.id === member.person.id}
       acts={acts}
       sheet={sheet}

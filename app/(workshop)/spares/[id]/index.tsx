@@ -11,6 +11,7 @@ import { useMeters } from '@/shared/client/meters';
 import { useModuleTypes } from '@/shared/client/module-types';
 import { useQuarantineSpare, useReleaseSpare, useSpare, useSpareHistory } from '@/shared/client/spares';
 import type { SpareDto } from '@/shared/contract/spare';
+import { CapacityFinding } from '@/shared/screens/spare/capacity-finding';
 import { moment } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { Button } from '@/shared/ui/primitives/button';
@@ -18,6 +19,7 @@ import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Link } from '@/shared/ui/primitives/link';
 import { Rule } from '@/shared/ui/primitives/rule';
 import { Txt } from '@/shared/ui/primitives/txt';
+import { CapacityHistory } from '@/shared/ui/spare/capacity-history';
 import { Columns } from '@/shared/ui/screen/columns';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
@@ -129,6 +131,13 @@ function Page({ spare, onBack, onStale }: { spare: SpareDto; onBack: () => void;
             ) : null}
             <Rule gap={0} />
             <SpareCapacity spare={spare} ratedAh={ratedAh} />
+            <CapacityFinding
+              spare={spare}
+              now={now}
+              offline={offline}
+              onOpenCharge={(id) => go(`/charges/${id}`)}
+              onStale={onStale}
+            />
             {spare.note ? <Txt tone="ink2">{spare.note}</Txt> : null}
           </View>
         }
@@ -141,6 +150,7 @@ function Page({ spare, onBack, onStale }: { spare: SpareDto; onBack: () => void;
                   now={now}
                   meterName={(id) => meters.data?.find((meter) => meter.id === id)?.name ?? null}
                 />
+                <CapacityHistory capacities={spare.capacities} now={now} onOpenCharge={(id) => go(`/charges/${id}`)} />
                 <SpareCharges charges={history.data.charges} now={now} onOpen={(id) => go(`/charges/${id}`)} />
               </>
             ) : history.isError ? (

@@ -7,6 +7,7 @@ import { useGate } from '@/shared/client/gate';
 import { useModuleType, useRemoveModuleType, useSaveModuleType } from '@/shared/client/module-types';
 import { partState } from '@/shared/client/part-state';
 import { moduleTypeSchema, type ModuleTypeDto } from '@/shared/contract/equipment';
+import { OwnCurve } from '@/shared/screens/workshop/own-curve';
 import { ProblemLine } from '@/shared/ui/auth/problem-line';
 import { useFormats } from '@/shared/ui/format/formats';
 import { Button } from '@/shared/ui/primitives/button';
@@ -76,7 +77,9 @@ function TypeForm({
     draft: `module-type.${type?.id ?? (model ? `new.${model.id}` : 'new')}`,
     send: async (output) => {
       const rev = f.form.getValues('baseRev');
-      const saved = await save.mutateAsync(type ? { ...output, id: type.id, rev } : output);
+      // The select knows no null: its empty value is the usual curve.
+      const input = { ...output, curveId: output.curveId || null };
+      const saved = await save.mutateAsync(type ? { ...input, id: type.id, rev } : input);
       toast({ text: `${saved.name} is saved.` });
       onBack();
     },
@@ -141,7 +144,33 @@ function TypeForm({
           }}
         />
       ) : null}
-      <TypeColumns form={<TypeFields form={f.form} readOnly={!gate.may} />} picture={<TypeCurve form={f.form} />} />
+      <TypeColumns
+        form={<TypeFields form={f.form} readOnly={!gate.may} />}
+        picture={
+          <TypeCurve
+            form={f.form}
+            own={type?.ownCurve ?? null}
+            readOnly={!gate.may}
+            ownActs={(input) =>
+              !gate.may ? null : type ? (
+                <OwnCurve
+                  type={type}
+                  rev={type.rev}
+                  input={input}
+                  onSaved={(saved) => {
+                    // A form that was behind already stays so: its next save has to say whose change came between.
+                    if (f.form.getValues('baseRev') === type.rev) f.form.setValue('baseRev', saved.rev);
+                  }}
+                />
+              ) : (
+                <Txt kind="small" tone="ink2">
+                  A curve of your own can be added once the type is saved.
+                </Txt>
+              )
+            }
+          />
+        }
+      />
       {gate.may && type ? (
         <View style={{ rowGap: 12 }}>
           {wide ? null : copyButton}

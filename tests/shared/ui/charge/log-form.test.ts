@@ -39,6 +39,13 @@ describe('a reading as it is typed', () => {
     expect(out.parse({ ...emptyLog(3), amps: '-5 A' })).toMatchObject({ amps: -5 });
   });
 
+  it('says where the clips were read where a meter is named, and leaves the charger’s own display to the server', () => {
+    const volts = { terminalVolts: '11.68' };
+    expect(read({ ...volts, meterId: 'm1', takenAt: 'module' }).data?.takenAt).toBe('module');
+    expect(read({ ...volts, meterId: 'm1', takenAt: '' }).data?.takenAt).toBeNull();
+    expect(read({ ...volts, meterId: null, takenAt: 'module' }).data?.takenAt).toBeUndefined();
+  });
+
   it('asks for at least one number, without blaming a field', () => {
     expect(read({}).errors).toEqual({ [nothingTyped]: 'Type at least one number that was read.' });
   });

@@ -78,6 +78,7 @@ describe('what stands on the label', () => {
     by: { id: 'ines', name: 'Ines Marlow' },
     groupVolts: [3.966, 3.962],
     celsius: 21,
+    early: false,
     verdict: { within: true, groups, spreadVolts: 0.004, worstGroup: 0 },
   };
 

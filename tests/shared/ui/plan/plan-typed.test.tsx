@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { CHEMISTRIES } from '@/calc';
 import { shownOptions } from '@/shared/ui/plan/plan-ways';
-import { emptyPlan, fieldOf, requestOf } from '@/shared/ui/plan/plan-typed';
+import { emptyPlan, fieldOf, flatChemistries, requestOf } from '@/shared/ui/plan/plan-typed';
 
 const at = { zone: 'Europe/Amsterdam', today: '2026-06-09', now: Date.parse('2026-06-09T11:31:00Z') };
 const typed = { ...emptyPlan, spareId: 's1', targetVolts: '3,968 V' };
@@ -62,6 +63,29 @@ describe('what is typed into a plan', () => {
 
   it('maps the server’s instants to the fields they are typed in', () => {
     expect([fieldOf('readyBy'), fieldOf('clipOnAt'), fieldOf('meterId')]).toEqual(['readyTime', 'clipTime', 'meterId']);
+  });
+});
+
+describe('a pack told by its state of charge', () => {
+  it('is offered for the chemistries whose curve has a plateau, and for no other', () => {
+    const withPlateau = Object.values(CHEMISTRIES)
+      .filter(({ plateau }) => plateau !== null)
+      .map(({ id }) => id);
+    expect([...flatChemistries].sort()).toEqual(withPlateau.sort());
+  });
+
+  const type = { groupsInSeries: 2, chargeLimitVolts: 3.65, dischargeLimitVolts: 2.5 };
+  const soc = { ...typed, targetVolts: '', targetBy: 'soc', targetSoc: '58 %' };
+  const limits = (chemistry: 'lfp' | 'nmc') => ({ ...at, limits: { type, chemistry, offsetMillivolts: 0 } });
+
+  it('asks for per cent in place of volts: 58 % is sent, and 5800 refused at its field', () => {
+    expect(requestOf(soc, limits('lfp'))).toMatchObject({ errors: {}, request: { targetVolts: null, targetSoc: 58 } });
+    expect(requestOf({ ...soc, targetSoc: '5800' }, limits('lfp')).errors.targetSoc).toMatch(/over 100/);
+    expect(requestOf({ ...soc, targetSoc: '' }, limits('lfp')).errors.targetSoc).toBeTruthy();
+  });
+
+  it('asks for volts again where the spare is changed to one whose voltage tells', () => {
+    expect(requestOf(soc, limits('nmc')).errors.targetVolts).toMatch(/missing/);
   });
 });
 

@@ -1,0 +1,47 @@
+import type { PlanModel } from '../plan/plan-model';
+import { splitLongResistance } from '../resistance/long-resistance';
+import { LIVE_SPREADS } from './live-spreads';
+import { MODEL_AXIS } from './live-draws';
+import type { LiveModel } from './live-model';
+import type { Followed } from './follow-readings';
+
+/** A resistance is not nothing. */
+const LEAST_FACTOR = 0.2;
+
+/** The plan's module with what the readings have taught: its capacity and resistance where they have, and the samples. */
+export function learnedModel(
+  model: PlanModel,
+  { set, learnedUnderCurrent: learned, lookedAtSoc }: Followed,
+  endSoc: number,
+): LiveModel {
+  const plain: LiveModel = { ...model, weights: null, planned: model.nominal };
+  if (set === null) return plain;
+  const capacity = learned.capacityAh ? learned.capacityAh.mean / mean(model.nominal.capacityAh) : 1;
+  const resistance = learned.longOhm ? learned.longOhm.mean / mean(model.nominal.longOhm) : 1;
+  // Between now and the end of the current the model's error forgets itself.
+  const kept = lookedAtSoc === null ? 0 : Math.exp(-Math.abs(endSoc - lookedAtSoc) / LIVE_SPREADS.modelCorrelationSoc);
+  return {
+    ...plain,
+    groups: model.groups.map((group) => ({
+      ...group,
+      capacityAh: group.capacityAh * capacity,
+      ...splitLongResistance((group.ohmicResistanceOhm + group.polarisationResistanceOhm) * resistance),
+    })),
+    nominal: {
+      ...model.nominal,
+      capacityAh: model.nominal.capacityAh.map((ampHours) => ampHours * capacity),
+      longOhm: model.nominal.longOhm.map((ohm) => ohm * resistance),
+    },
+    samples: set.samples.map((sample, at) => {
+      const shared = set.sharedOf('volts', at);
+      const variance = kept ** 2 * (shared.variance ?? 0) + 1 - kept ** 2;
+      const error = kept * shared.mean + Math.sqrt(variance) * sample.draws[MODEL_AXIS]!;
+      // The error under current is one of the resistance, as it is then.
+      const factor = Math.max(LEAST_FACTOR, 1 + LIVE_SPREADS.modelRelative * error);
+      return { ...sample, longOhm: sample.longOhm.map((ohm) => ohm * factor) };
+    }),
+    weights: set.weights,
+  };
+}
+
+const mean = (values: readonly number[]): number => values.reduce((sum, one) => sum + one, 0) / values.length;

@@ -1,0 +1,61 @@
+import type { Learned, Reckoning } from '../live-types';
+import type { PlanModel } from '../plan/plan-model';
+import type { Sample } from '../plan/samples';
+import { leadOhmOf } from './live-draws';
+import type { LivePast } from './live-rounds';
+import type { ParticleSet } from './particle-set';
+
+/** Learned is what has lost at least this share of its variance: less comes about by chance in a set of this size. */
+const LEARNED_SHARE = 0.4;
+
+export const NOTHING_LEARNED: Reckoning['learned'] = { capacityAh: null, longOhm: null, leadOhm: null };
+
+const meanOf = (values: readonly number[]): number => values.reduce((sum, one) => sum + one, 0) / values.length;
+
+/** What the samples of a charge say of its module and leads, before the readings and after. */
+export class Learns {
+  private readonly numbers: Record<keyof Reckoning['learned'], ((sample: Sample) => number) | null>;
+  private readonly prior: Record<keyof Reckoning['learned'], { mean: number; variance: number } | null>;
+
+  /** @param set not read yet */
+  constructor(
+    model: PlanModel,
+    past: LivePast,
+    private readonly set: ParticleSet,
+  ) {
+    const round = past.begun[past.begun.length - 1];
+    const step = round?.lanes.length === 1 ? round.lanes[0]!.step : null;
+    const channel = model.input.channels.find((one) => one.channelId === step?.channelIds[0]);
+    this.numbers = {
+      capacityAh: ({ capacityAh }) => meanOf(capacityAh),
+      longOhm: ({ longOhm }) => meanOf(longOhm),
+      leadOhm: channel ? (sample) => leadOhmOf(channel, sample) : null,
+    };
+    this.prior = {
+      capacityAh: this.moments('capacityAh'),
+      longOhm: this.moments('longOhm'),
+      leadOhm: this.moments('leadOhm'),
+    };
+  }
+
+  private moments(name: keyof Reckoning['learned']): { mean: number; variance: number } | null {
+    const of = this.numbers[name];
+    return of && this.set.moments((sample) => of(sample));
+  }
+
+  now(): Reckoning['learned'] {
+    return { capacityAh: this.one('capacityAh'), longOhm: this.one('longOhm'), leadOhm: this.one('leadOhm') };
+  }
+
+  private one(name: keyof Reckoning['learned']): Learned | null {
+    const prior = this.prior[name];
+    const now = this.moments(name);
+    if (!prior || !now || !this.set.read || !(now.variance < (1 - LEARNED_SHARE) * prior.variance)) return null;
+    return {
+      mean: now.mean,
+      sd: Math.sqrt(now.variance),
+      priorMean: prior.mean,
+      priorSd: Math.sqrt(prior.variance),
+    };
+  }
+}

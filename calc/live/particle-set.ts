@@ -1,0 +1,281 @@
+import type { PlanModel } from '../plan/plan-model';
+import type { Sample } from '../plan/samples';
+import { inverseNormal } from '../statistics/inverse-normal';
+import { choleskyLower, effectiveSampleSize, systematicResample } from '../statistics/particle-weights';
+import { seededRandom } from '../statistics/seeded-random';
+import { liveDraws, liveSample, readAxes } from './live-draws';
+
+/** Resampled below this share of the samples. */
+const LEAST_SHARE = 0.5;
+/**
+ * How far a resampled sample is drawn to the mean before it is jittered, so that the set keeps its variance: (3δ − 1)/2δ with
+ * δ = 0.95 (J. Liu, M. West, Combined parameter and state estimation in simulation-based filtering, 2001, from memory).
+ */
+const SHRINK = (3 * 0.95 - 1) / (2 * 0.95);
+const JITTER = Math.sqrt(1 - SHRINK * SHRINK);
+/** One reading is taken in by at most so many parts, each with its own resampling. */
+const MOST_PARTS = 12;
+
+/** Errors that a kind of reading carries from one to the next. */
+export const MEMORIES = { volts: 0, amps: 1, celsius: 2, rest: 3 } as const;
+export type Memory = keyof typeof MEMORIES;
+const MEMORY_COUNT = 4;
+
+/** One kind of reading under the samples: what was read less what each sample has for it. */
+export interface Look {
+  memory: Memory;
+  residual: (sample: Sample) => number;
+  /** Where it is not known which of two things was read: what was read less the other; both are as likely. */
+  otherResidual?: (sample: Sample) => number;
+  /** What one standard deviation of the error that the readings share makes here. */
+  sharedSd: number;
+  /** Share of it that is left since the last reading of the kind. */
+  kept: number;
+  /** The same where it can only change smoothly, for what is a jump; left out: as `kept`. */
+  keptSmooth?: number;
+  /** Of this reading alone, variance. */
+  ownVariance: number;
+}
+
+/**
+ * Weighted samples of a running charge.
+ *
+ * Each carries beside its draws what the model's error, the ammeter's and the thermometer's are likely to be by the readings so
+ * far: a first-order process each, followed exactly (so that only the draws are sampled), with a variance that all samples
+ * share. A hundred readings that share an error are therefore worth little more than one.
+ */
+export class ParticleSet {
+  readonly samples: Sample[];
+  readonly weights: Float64Array;
+  /** What the shared errors are likely to be, one a kind and sample. */
+  private memory: Float64Array;
+  private readonly variance = [NaN, NaN, NaN, NaN];
+  private readonly axes: number[];
+  private readonly random: () => number;
+  /** Room for one number of each sample. */
+  private readonly values: Float64Array;
+  private readonly prior: Float64Array;
+  private readonly off: Float64Array;
+  private readonly log: Float64Array;
+  /** Of the look that was asked for last and these samples: what was read less what each has, and less the other. */
+  private asked: { look: Look; residual: Float64Array; other: Float64Array | null } | null = null;
+  /** Any reading was taken in. */
+  read = false;
+
+  constructor(
+    private readonly model: PlanModel,
+    readonly count: number,
+    seed: number,
+  ) {
+    this.samples = liveDraws(count, seed).map((draws) => liveSample(model, draws));
+    this.weights = new Float64Array(count).fill(1 / count);
+    this.memory = new Float64Array(count * MEMORY_COUNT);
+    this.values = new Float64Array(count);
+    this.prior = new Float64Array(count);
+    this.off = new Float64Array(count);
+    this.log = new Float64Array(count);
+    this.axes = readAxes(model);
+    this.random = seededRandom(seed + 1);
+  }
+
+  /** Mean and variance of a number over the samples. */
+  moments(of: (sample: Sample, at: number) => number): { mean: number; variance: number } {
+    const { samples, weights, count, values } = this;
+    let mean = 0;
+    for (let at = 0; at < count; at += 1) {
+      values[at] = of(samples[at]!, at);
+      mean += weights[at]! * values[at]!;
+    }
+    let variance = 0;
+    for (let at = 0; at < count; at += 1) variance += weights[at]! * (values[at]! - mean) ** 2;
+    return { mean, variance };
+  }
+
+  /** Of the shared error now, in standard deviations: what one sample has for it, and the variance about that. */
+  sharedOf(memory: Memory, at: number): { mean: number; variance: number | null } {
+    const column = MEMORIES[memory];
+    const variance = this.variance[column]!;
+    return { mean: this.memory[at * MEMORY_COUNT + column]!, variance: Number.isNaN(variance) ? null : variance };
+  }
+
+  /** Variance of the shared error before a look, of the whole of it. */
+  private before({ memory }: Look, kept: number): number {
+    const known = this.variance[MEMORIES[memory]]!;
+    return Number.isNaN(known) ? 1 : kept ** 2 * known + 1 - kept ** 2;
+  }
+
+  /**
+   * How far a look is off, in standard deviations: by the samples with the whole of the shared error (`level`), and from
+   * where the readings before it have it (`jump`, null for the first of its kind).
+   */
+  offOf(look: Look, jumpSd: number): { level: number; jump: number | null } {
+    const column = MEMORIES[look.memory];
+    const nearer = this.nearerResidual(look);
+    const level = this.moments((_, at) => nearer[at]!);
+    const whole = Math.sqrt(level.variance + look.sharedSd ** 2 + look.ownVariance);
+    if (Number.isNaN(this.variance[column]!)) return { level: level.mean / whole, jump: null };
+    const kept = look.keptSmooth ?? look.kept;
+    const step = this.moments((_, at) => nearer[at]! - look.sharedSd * kept * this.memory[at * MEMORY_COUNT + column]!);
+    const shared = look.sharedSd ** 2 * this.before(look, kept);
+    const small = Math.sqrt(step.variance + shared + look.ownVariance + jumpSd ** 2);
+    return { level: level.mean / whole, jump: step.mean / small };
+  }
+
+  private nearerResidual(look: Look): Float64Array {
+    const { residual, other } = this.residualsOf(look);
+    if (other === null) return residual;
+    const far = (of: Float64Array): number => Math.abs(this.moments((_, at) => of[at]!).mean);
+    return far(residual) <= far(other) ? residual : other;
+  }
+
+  /** A look is judged before it is taken in: what the samples have for it is worked out once. */
+  private residualsOf(look: Look): { residual: Float64Array; other: Float64Array | null } {
+    if (this.asked?.look === look) return this.asked;
+    const { residual, otherResidual } = look;
+    const values = new Float64Array(this.count);
+    const others = otherResidual ? new Float64Array(this.count) : null;
+    for (let at = 0; at < this.count; at += 1) {
+      values[at] = residual(this.samples[at]!);
+      if (others) others[at] = otherResidual!(this.samples[at]!);
+    }
+    this.asked = { look, residual: values, other: others };
+    return this.asked;
+  }
+
+  /** Reweights by a look; resamples with jitter where the effective sample size falls below half. */
+  take(look: Look): void {
+    this.read = true;
+    const column = MEMORIES[look.memory];
+    const before = this.before(look, look.kept);
+    const variance = look.sharedSd ** 2 * before + look.ownVariance;
+    let left = 1;
+    this.lookAt(look, variance);
+    for (let part = 0; left > 0; part += 1) {
+      const share = part === MOST_PARTS ? left : this.bearable(left);
+      this.reweigh(share);
+      left -= share;
+      if (effectiveSampleSize(this.weights) <= LEAST_SHARE * this.count * 1.001) {
+        this.resample();
+        this.lookAt(look, variance);
+      }
+    }
+    const gain = (look.sharedSd * before) / variance;
+    for (let at = 0; at < this.count; at += 1)
+      this.memory[at * MEMORY_COUNT + column] = this.prior[at]! + gain * this.off[at]!;
+    this.variance[column] = (1 - gain * look.sharedSd) * before;
+  }
+
+  /** Of each sample: what it expects of the shared error, how far off the look is then, and the logarithm of its likelihood. */
+  private lookAt(look: Look, variance: number): void {
+    const column = MEMORIES[look.memory];
+    const known = !Number.isNaN(this.variance[column]!);
+    const { residual, other: others } = this.residualsOf(look);
+    for (let at = 0; at < this.count; at += 1) {
+      const prior = known ? look.kept * this.memory[at * MEMORY_COUNT + column]! : 0;
+      this.prior[at] = prior;
+      const off = residual[at]! - look.sharedSd * prior;
+      if (others === null) {
+        this.off[at] = off;
+        this.log[at] = (-0.5 * off * off) / variance;
+        continue;
+      }
+      const other = others[at]! - look.sharedSd * prior;
+      const [near, far] = Math.abs(off) <= Math.abs(other) ? [off, other] : [other, off];
+      const ratio = Math.exp((-0.5 * (far * far - near * near)) / variance);
+      this.off[at] = (near + ratio * far) / (1 + ratio);
+      this.log[at] = (-0.5 * near * near) / variance + Math.log((1 + ratio) / 2);
+    }
+  }
+
+  /** The largest share of what is left of a look that keeps half the samples effective. */
+  private bearable(left: number): number {
+    const least = LEAST_SHARE * this.count;
+    if (this.sizeAfter(left) >= least) return left;
+    let low = 0;
+    let high = left;
+    for (let pass = 0; pass < 12; pass += 1) {
+      const middle = (low + high) / 2;
+      if (this.sizeAfter(middle) >= least) low = middle;
+      else high = middle;
+    }
+    return high;
+  }
+
+  private most(): number {
+    let most = -Infinity;
+    for (let at = 0; at < this.count; at += 1) if (this.log[at]! > most) most = this.log[at]!;
+    return most;
+  }
+
+  private sizeAfter(share: number): number {
+    const most = this.most();
+    let sum = 0;
+    let squares = 0;
+    for (let at = 0; at < this.count; at += 1) {
+      const weight = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
+      sum += weight;
+      squares += weight * weight;
+    }
+    return (sum * sum) / squares;
+  }
+
+  private reweigh(share: number): void {
+    const most = this.most();
+    let sum = 0;
+    for (let at = 0; at < this.count; at += 1) {
+      this.weights[at] = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
+      sum += this.weights[at]!;
+    }
+    for (let at = 0; at < this.count; at += 1) this.weights[at] = this.weights[at]! / sum;
+  }
+
+  private resample(): void {
+    const { axes, count, weights } = this;
+    // Errors that nothing was read of yet are the same in all.
+    const columns = this.variance.flatMap((one, column) => (Number.isNaN(one) ? [] : [column]));
+    const size = axes.length + columns.length;
+    const rows = new Float64Array(count * size);
+    const mean = new Float64Array(size);
+    for (let at = 0; at < count; at += 1) {
+      const { draws } = this.samples[at]!;
+      for (let k = 0; k < size; k += 1) {
+        const value = k < axes.length ? draws[axes[k]!]! : this.memory[at * MEMORY_COUNT + columns[k - axes.length]!]!;
+        rows[at * size + k] = value;
+        mean[k]! += weights[at]! * value;
+      }
+    }
+    const lower = choleskyLower(covariance(rows, mean, weights, size), size);
+    const picked = systematicResample(weights, this.random());
+    const memory = new Float64Array(count * MEMORY_COUNT);
+    const noise = new Float64Array(size);
+    for (let at = 0; at < count; at += 1) {
+      const from = picked[at]! * size;
+      for (let k = 0; k < size; k += 1) noise[k] = JITTER * inverseNormal(Math.max(1e-12, this.random()));
+      const draws = this.samples[at]!.draws.slice();
+      for (let k = 0; k < size; k += 1) {
+        let value = mean[k]! + SHRINK * (rows[from + k]! - mean[k]!);
+        for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * noise[j]!;
+        if (k < axes.length) draws[axes[k]!] = value;
+        else memory[at * MEMORY_COUNT + columns[k - axes.length]!] = value;
+      }
+      this.samples[at] = liveSample(this.model, draws);
+    }
+    this.memory = memory;
+    this.asked = null;
+    weights.fill(1 / count);
+  }
+}
+
+function covariance(rows: Float64Array, mean: Float64Array, weights: Float64Array, size: number): Float64Array {
+  const matrix = new Float64Array(size * size);
+  for (let at = 0; at < weights.length; at += 1) {
+    for (let row = 0; row < size; row += 1) {
+      const off = weights[at]! * (rows[at * size + row]! - mean[row]!);
+      for (let column = 0; column <= row; column += 1)
+        matrix[row * size + column]! += off * (rows[at * size + column]! - mean[column]!);
+    }
+  }
+  for (let row = 0; row < size; row += 1)
+    for (let column = row + 1; column < size; column += 1) matrix[row * size + column] = matrix[column * size + row]!;
+  return matrix;
+}
