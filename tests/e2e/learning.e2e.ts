@@ -43,8 +43,9 @@ describeInBrowser('what a charge teaches, on a technician’s phone', () => {
     for (const [label, text] of Object.entries(typed)) await field(sheet, label).fill(text);
     return sheet;
   }
-  const logged = async () => {
-    await words(technician.page, 'Logged. The finish is reckoned from it.').waitFor();
+  const logged = async (how: 'fits' | 'odd' = 'fits') => {
+    const then = how === 'fits' ? 'The finish is reckoned from it.' : 'It does not fit: see what to check.';
+    await words(technician.page, `Logged. ${then}`).waitFor();
     await expect.poll(() => technician.page.getByRole('dialog').count(), patience).toBe(0);
   };
 
@@ -75,7 +76,7 @@ describeInBrowser('what a charge teaches, on a technician’s phone', () => {
       await field(sheet, 'Current').blur();
       await words(sheet, /No current flows\..* was expected\./).waitFor();
       await button(sheet, 'It reads so: log it').click();
-      await logged();
+      await logged('odd');
       const box = page.getByRole('region', { name: 'Odd reading' }).locator('visible=true').first();
       await box.waitFor();
       const text = await box.innerText();
