@@ -89,6 +89,7 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     }
     if (takeIn(set, looks, at, since, terminal)) voltsSoc = soc;
   }
+  set.settle();
   return {
     ...followed,
     set: set.read ? set : null,

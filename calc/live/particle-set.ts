@@ -4,6 +4,7 @@ import { inverseNormal } from '../statistics/inverse-normal';
 import { choleskyLower, effectiveSampleSize, systematicResample } from '../statistics/particle-weights';
 import { seededRandom } from '../statistics/seeded-random';
 import { liveDraws, liveSample, readAxes } from './live-draws';
+import { posteriorOf } from './posterior';
 
 /** Resampled below this share of the samples. */
 const LEAST_SHARE = 0.5;
@@ -45,8 +46,11 @@ export interface Look {
  * share. A hundred readings that share an error are therefore worth little more than one.
  */
 export class ParticleSet {
-  readonly samples: Sample[];
-  readonly weights: Float64Array;
+  samples: Sample[];
+  weights: Float64Array;
+  /** The looks that were taken in, in their order. */
+  private readonly taken: Look[] = [];
+  private readonly draws: number[][];
   /** What the shared errors are likely to be, one a kind and sample. */
   private memory: Float64Array;
   private readonly variance = [NaN, NaN, NaN, NaN];
@@ -67,7 +71,8 @@ export class ParticleSet {
     readonly count: number,
     seed: number,
   ) {
-    this.samples = liveDraws(count, seed).map((draws) => liveSample(model, draws));
+    this.draws = liveDraws(count, seed);
+    this.samples = this.draws.map((draws) => liveSample(model, draws));
     this.weights = new Float64Array(count).fill(1 / count);
     this.memory = new Float64Array(count * MEMORY_COUNT);
     this.values = new Float64Array(count);
@@ -145,6 +150,7 @@ export class ParticleSet {
   /** Reweights by a look; resamples with jitter where the effective sample size falls below half. */
   take(look: Look): void {
     this.read = true;
+    this.taken.push(look);
     const column = MEMORIES[look.memory];
     const before = this.before(look, look.kept);
     const variance = look.sharedSd ** 2 * before + look.ownVariance;
@@ -227,6 +233,16 @@ export class ParticleSet {
       sum += this.weights[at]!;
     }
     for (let at = 0; at < this.count; at += 1) this.weights[at] = this.weights[at]! / sum;
+  }
+
+  /** Puts samples by all the looks at once in the place of those that were resampled look by look. */
+  settle(): void {
+    if (this.taken.length === 0) return;
+    const { samples, weights, memory } = posteriorOf(this.model, this.taken, this.draws, this.axes);
+    this.samples = samples;
+    this.weights = weights;
+    this.memory = memory;
+    this.asked = null;
   }
 
   private resample(): void {
