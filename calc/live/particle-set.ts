@@ -50,14 +50,13 @@ export class ParticleSet {
   weights: Float64Array;
   /** The looks that were taken in, in their order. */
   private readonly taken: Look[] = [];
-  private readonly draws: number[][];
   /** What the shared errors are likely to be, one a kind and sample. */
   private memory: Float64Array;
   private readonly variance = [NaN, NaN, NaN, NaN];
   private readonly axes: number[];
   private readonly random: () => number;
   /** Room for one number of each sample. */
-  private readonly values: Float64Array;
+  private values: Float64Array;
   private readonly prior: Float64Array;
   private readonly off: Float64Array;
   private readonly log: Float64Array;
@@ -66,13 +65,13 @@ export class ParticleSet {
   /** Any reading was taken in. */
   read = false;
 
+  /** @param count of the samples that judge each reading by those before it */
   constructor(
     private readonly model: PlanModel,
-    readonly count: number,
-    seed: number,
+    private count: number,
+    private readonly seed: number,
   ) {
-    this.draws = liveDraws(count, seed);
-    this.samples = this.draws.map((draws) => liveSample(model, draws));
+    this.samples = liveDraws(count, seed).map((draws) => liveSample(model, draws));
     this.weights = new Float64Array(count).fill(1 / count);
     this.memory = new Float64Array(count * MEMORY_COUNT);
     this.values = new Float64Array(count);
@@ -235,13 +234,19 @@ export class ParticleSet {
     for (let at = 0; at < this.count; at += 1) this.weights[at] = this.weights[at]! / sum;
   }
 
-  /** Puts samples by all the looks at once in the place of those that were resampled look by look. */
-  settle(): void {
-    if (this.taken.length === 0) return;
-    const { samples, weights, memory } = posteriorOf(this.model, this.taken, this.draws, this.axes);
-    this.samples = samples;
-    this.weights = weights;
-    this.memory = memory;
+  /**
+   * Puts samples by all the looks at once in the place of those that were resampled look by look. No look is taken in after it.
+   *
+   * @param count of the samples then
+   */
+  settle(count: number): void {
+    if (!this.read) return;
+    const settled = posteriorOf(this.model, this.taken, liveDraws(count, this.seed), this.axes);
+    this.count = count;
+    this.values = new Float64Array(count);
+    this.samples = settled.samples;
+    this.weights = settled.weights;
+    this.memory = settled.memory;
     this.asked = null;
   }
 

@@ -13,10 +13,12 @@ const SHORT = 0.02;
 /** Of the difference quotient, standard deviations. */
 const NUDGE = 0.05;
 /** The draws stand this much wider about the likeliest ones than a straight model would have them, so that no tail is missed. */
-const WIDER = 1.25;
+const WIDER = 1.15;
 /** Redrawn about what the first draws have weighed, where fewer than this share of them count. */
 const ENOUGH_SHARE = 0.5;
-const MOST_ROUNDS = 3;
+const MOST_ROUNDS = 5;
+/** For that the weights are flattened until so many draws an axis count: a spread seen by fewer is chance. */
+const COUNT_AN_AXIS = 8;
 
 /** Samples that stand for all that was read, with their weights and what each has for the shared errors. */
 export interface Posterior {
@@ -95,45 +97,53 @@ export function posteriorOf(
     offIn(chain, liveSample(model, own), memory, into);
   };
   let { centre, lower } = fit(at, chain.length, size);
-  const samples: Sample[] = [];
-  const weights = new Float64Array(count);
-  const memories = new Float64Array(count * MEMORY_COUNT);
+  let best: (Posterior & { worth: number }) | null = null;
   const off = new Float64Array(chain.length);
-  const rows = new Float64Array(count * size);
   for (let round = 1; ; round += 1) {
-    let most = -Infinity;
+    const samples: Sample[] = [];
+    const logs = new Float64Array(count);
+    const memories = new Float64Array(count * MEMORY_COUNT);
+    const rows = new Float64Array(count * size);
     for (let one = 0; one < count; one += 1) {
       const own = draws[one]!.slice();
       let log = 0;
       for (let k = 0; k < size; k += 1) {
         const z = draws[one]![axes[k]!]!;
-        log += 0.5 * z * z;
-      }
-      for (let k = 0; k < size; k += 1) {
         let value = centre[k]!;
         for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * draws[one]![axes[j]!]!;
         own[axes[k]!] = value;
         rows[one * size + k] = value;
-        log -= 0.5 * value * value;
+        log += 0.5 * (z * z - value * value);
       }
       const sample = liveSample(model, own);
-      samples[one] = sample;
+      samples.push(sample);
       offIn(chain, sample, memory, off);
       for (let k = 0; k < off.length; k += 1) log -= 0.5 * off[k]! * off[k]!;
       memories.set(memory, one * MEMORY_COUNT);
-      weights[one] = log;
-      if (log > most) most = log;
+      logs[one] = log;
     }
-    let sum = 0;
-    for (let one = 0; one < count; one += 1) {
-      weights[one] = Math.exp(weights[one]! - most);
-      sum += weights[one]!;
-    }
-    for (let one = 0; one < count; one += 1) weights[one] = weights[one]! / sum;
-    if (round === MOST_ROUNDS || effectiveSampleSize(weights) >= ENOUGH_SHARE * count)
-      return { samples, weights, memory: memories };
-    ({ centre, lower } = about(rows, weights, size, lower));
+    const weights = weightsOf(logs, 1);
+    const worth = effectiveSampleSize(weights);
+    if (best === null || worth > best.worth) best = { samples, weights, memory: memories, worth };
+    if (round === MOST_ROUNDS || worth >= ENOUGH_SHARE * count) return best;
+    ({ centre, lower } = about(rows, flattened(logs, COUNT_AN_AXIS * size), size));
   }
+}
+
+/** Weights of the logarithms, each taken times `power`; their sum is 1. */
+function weightsOf(logs: Float64Array, power: number): Float64Array {
+  const most = logs.reduce((high, one) => Math.max(high, one), -Infinity);
+  const weights = logs.map((one) => Math.exp(power * (one - most)));
+  const sum = weights.reduce((total, one) => total + one, 0);
+  return weights.map((one) => one / sum);
+}
+
+/** The same with the largest power, 1 at most, that leaves so many draws effective. */
+function flattened(logs: Float64Array, least: number): Float64Array {
+  let weights = weightsOf(logs, 1);
+  for (let power = 0.8; power > 0.01 && effectiveSampleSize(weights) < least; power *= 0.8)
+    weights = weightsOf(logs, power);
+  return weights;
 }
 
 /** The likeliest draws under readings and prior, and the spread about them where the model is straight. */
@@ -185,13 +195,12 @@ function fit(at: (x: Float64Array, into: Float64Array) => void, looks: number, s
   return { centre, lower: scaled(choleskyLower(choleskyInverse(choleskyLower(normal, size), size), size), WIDER) };
 }
 
-/** Mean and spread of weighted draws, a little wider; a spread that has collapsed stays as it was. */
-function about(rows: Float64Array, weights: Float64Array, size: number, before: Float64Array) {
+/** Mean and spread of weighted draws, a little wider. */
+function about(rows: Float64Array, weights: Float64Array, size: number) {
   const centre = new Float64Array(size);
   weights.forEach((weight, one) => {
     for (let k = 0; k < size; k += 1) centre[k] = centre[k]! + weight * rows[one * size + k]!;
   });
-  if (effectiveSampleSize(weights) < 3 * size) return { centre, lower: before };
   const matrix = new Float64Array(size * size);
   weights.forEach((weight, one) => {
     for (let k = 0; k < size; k += 1)
