@@ -2,7 +2,7 @@ import type { OddSeen, Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
 import { twoSidedTail } from '../statistics/normal-cdf';
 import { Learns, NOTHING_LEARNED } from './learned';
-import { PARTICLES, LIVE_SPREADS } from './live-spreads';
+import { JUDGES, LIVE_SPREADS, PARTICLES } from './live-spreads';
 import type { LivePast } from './live-rounds';
 import { isFull, Looks, type Since } from './looks';
 import { observationsOf, type Observation } from './observations';
@@ -43,7 +43,7 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     learnedUnderCurrent: NOTHING_LEARNED,
   };
   if (kept.length === 0 || model.samples.length === 1) return followed;
-  const set = new ParticleSet(model, Math.max(PARTICLES, model.samples.length), seed);
+  const set = new ParticleSet(model, JUDGES, seed);
   const observations = observationsOf(model, past, kept);
   const looks = new Looks(model, rippleOf(observations));
   const learns = new Learns(model, past, set);
@@ -89,6 +89,7 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     }
     if (takeIn(set, looks, at, since, terminal)) voltsSoc = soc;
   }
+  set.settle(Math.max(PARTICLES, model.samples.length));
   return {
     ...followed,
     set: set.read ? set : null,

@@ -6,8 +6,8 @@ import type { LivePast } from './live-rounds';
 import type { ParticleSet } from './particle-set';
 import { mean } from '../statistics/mean';
 
-/** Learned is what has lost at least this share of its variance: less comes about by chance in a set of this size. */
-const LEARNED_SHARE = 0.4;
+/** Learned is what has lost at least this share of its variance: less is no news, and in a set of this size partly chance. */
+const LEARNED_SHARE = 0.2;
 
 export const NOTHING_LEARNED: Reckoning['learned'] = { capacityAh: null, longOhm: null, leadOhm: null };
 

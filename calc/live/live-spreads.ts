@@ -11,16 +11,18 @@ export const LIVE_SPREADS = {
    * of one hour say little more of the module than a few. One RC pair for the many of a cell: measured tapers grow slower by
    * half and more on their way.
    */
-  modelRelative: 0.06,
+  modelRelative: 0.05,
   /** And beside it, V a group: the curve's shape between its points. */
-  modelVolts: 0.001,
+  modelVolts: 0.0005,
   /**
-   * The curve along its own axis, as a share of the capacity: where a cell is empty differs from the cell of the table, and
-   * where the curve is steep that is many millivolts. It came in after a measured charge from nearly empty (LMO blend, 15.3 A)
-   * had been read as a capacity 8 % too high by the volts of its steep beginning. Its size is a guess: with nothing
-   * it did that, and with more the bands hold more than they promise near the end of a charge.
+   * The curve along its own axis where a cell is empty, as a share of the capacity: there a cell differs from that of the table
+   * (electrodes are balanced for their full end, and what was lost with age shows at the empty one), and there the curve is
+   * steep. A guess, set with measured logs known: a charge from nearly empty (LMO blend, 15.3 A) had been read as a capacity
+   * 13 % too high by the volts of its steep beginning.
    */
-  modelSoc: 0.0045,
+  emptySoc: 0.03,
+  /** What is left of it falls to 1/e over this state of charge. */
+  emptySocWidth: 0.13,
   /** The model's error forgets itself over this much charge, as a share of the capacity: the width of a hump of a curve. */
   modelCorrelationSoc: 0.08,
   /** Flicker of a terminal voltmeter between two looks, V, beside its last digit. */
@@ -55,3 +57,6 @@ export const LIVE_SPREADS = {
 
 /** Samples of a charge that has been read. */
 export const PARTICLES = 256;
+
+/** Samples that judge each reading by those before it: only whether one is odd hangs on them, not the estimate. */
+export const JUDGES = 128;

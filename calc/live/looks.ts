@@ -33,6 +33,10 @@ const FULL_SHARE = 0.97;
 /** A current this near to what a warm charger gives is that, as a share of it. */
 const DERATED_SHARE = 0.05;
 
+/** What the curve may be off along its own axis at a state of charge, as a share of the capacity. */
+const curveAxisSd = (soc: number): number =>
+  LIVE_SPREADS.emptySoc * Math.exp(-Math.max(0, soc) / LIVE_SPREADS.emptySocWidth);
+
 /** What the source gives where no voltage limit rules, A: as set, or where that is what was read what it gives when warm. */
 function fullNear({ fullAmps, channel, knot }: Circuit, amps: number): number | null {
   const warm = channel.derating && !knot.tapering ? channel.maxAmps * channel.derating.ampsShare : Infinity;
@@ -101,7 +105,7 @@ export class Looks {
   modelSd(observation: Observation, circuit: Circuit): number {
     const { groups, shares, knot } = circuit;
     const soc = groups.reduce((sum, group, at) => sum + shares[at]! * knot.state.soc[group]!, 0);
-    return Math.hypot(this.overSd(observation, circuit), LIVE_SPREADS.modelSoc * slopeAtSoc(this.model.curve, soc));
+    return Math.hypot(this.overSd(observation, circuit), curveAxisSd(soc) * slopeAtSoc(this.model.curve, soc));
   }
 
   /**

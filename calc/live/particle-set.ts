@@ -4,6 +4,7 @@ import { inverseNormal } from '../statistics/inverse-normal';
 import { choleskyLower, effectiveSampleSize, systematicResample } from '../statistics/particle-weights';
 import { seededRandom } from '../statistics/seeded-random';
 import { liveDraws, liveSample, readAxes } from './live-draws';
+import { posteriorOf } from './posterior';
 
 /** Resampled below this share of the samples. */
 const LEAST_SHARE = 0.5;
@@ -45,15 +46,17 @@ export interface Look {
  * share. A hundred readings that share an error are therefore worth little more than one.
  */
 export class ParticleSet {
-  readonly samples: Sample[];
-  readonly weights: Float64Array;
+  samples: Sample[];
+  weights: Float64Array;
+  /** The looks that were taken in, in their order. */
+  private readonly taken: Look[] = [];
   /** What the shared errors are likely to be, one a kind and sample. */
   private memory: Float64Array;
   private readonly variance = [NaN, NaN, NaN, NaN];
   private readonly axes: number[];
   private readonly random: () => number;
   /** Room for one number of each sample. */
-  private readonly values: Float64Array;
+  private values: Float64Array;
   private readonly prior: Float64Array;
   private readonly off: Float64Array;
   private readonly log: Float64Array;
@@ -62,10 +65,11 @@ export class ParticleSet {
   /** Any reading was taken in. */
   read = false;
 
+  /** @param count of the samples that judge each reading by those before it */
   constructor(
     private readonly model: PlanModel,
-    readonly count: number,
-    seed: number,
+    private count: number,
+    private readonly seed: number,
   ) {
     this.samples = liveDraws(count, seed).map((draws) => liveSample(model, draws));
     this.weights = new Float64Array(count).fill(1 / count);
@@ -145,6 +149,7 @@ export class ParticleSet {
   /** Reweights by a look; resamples with jitter where the effective sample size falls below half. */
   take(look: Look): void {
     this.read = true;
+    this.taken.push(look);
     const column = MEMORIES[look.memory];
     const before = this.before(look, look.kept);
     const variance = look.sharedSd ** 2 * before + look.ownVariance;
@@ -227,6 +232,22 @@ export class ParticleSet {
       sum += this.weights[at]!;
     }
     for (let at = 0; at < this.count; at += 1) this.weights[at] = this.weights[at]! / sum;
+  }
+
+  /**
+   * Puts samples by all the looks at once in the place of those that were resampled look by look. No look is taken in after it.
+   *
+   * @param count of the samples then
+   */
+  settle(count: number): void {
+    if (!this.read) return;
+    const settled = posteriorOf(this.model, this.taken, liveDraws(count, this.seed), this.axes);
+    this.count = count;
+    this.values = new Float64Array(count);
+    this.samples = settled.samples;
+    this.weights = settled.weights;
+    this.memory = settled.memory;
+    this.asked = null;
   }
 
   private resample(): void {

@@ -50,22 +50,21 @@ describe('a discharge', () => {
 });
 
 describe('a current with ripple', () => {
-  it('of 3 % to and fro at 10 s raises nothing at any hour, has the ampere-hours of its mean to 1 % and the end to 4 %', () => {
+  it('of 3 % to and fro at 10 s raises nothing at any hour, has the ampere-hours of its mean to 1 % and the end to 3 %', () => {
     const chance = new Chance(5);
     const { at, currentS } = watched(10, 10, 5400, () => 10 * (1 + 0.03 * Math.sin(2 * Math.PI * chance.uniform())));
     for (const nowS of [600, 1800, 3600, 5400]) {
       const seen = at(nowS);
       expect(seen.odd).toBeNull();
       expect(Math.abs(seen.deliveredAh / ((10 * nowS) / 3600) - 1)).toBeLessThan(0.01);
-      // Seven kinds of draws are resampled by the current alone: the middle of 256 samples scatters by some 3 % of what is left.
-      expect(Math.abs(seen.currentEndS / currentS - 1)).toBeLessThan(0.04);
+      expect(Math.abs(seen.currentEndS / currentS - 1)).toBeLessThan(0.03);
     }
   });
 });
 
 describe('a display of 0.1 A steps', () => {
   it.each([10, 900])(
-    'that flickers between 1.9 and 2.0 A, read every %d s, raises nothing and keeps its end to 3 %',
+    'that flickers between 1.9 and 2.0 A, read every %d s, raises nothing and keeps its end to 4 %',
     (everyS) => {
       const chance = new Chance(6);
       const { at, currentS } = watched(2, everyS, 18_000, () => (chance.uniform() < 0.5 ? 1.9 : 2), {
@@ -74,7 +73,7 @@ describe('a display of 0.1 A steps', () => {
       for (const nowS of [1800, 9000, 18_000]) {
         const seen = at(nowS);
         expect(seen.odd).toBeNull();
-        expect(Math.abs(seen.currentEndS / (currentS / 0.975) - 1)).toBeLessThan(0.03);
+        expect(Math.abs(seen.currentEndS / (currentS / 0.975) - 1)).toBeLessThan(0.04);
       }
     },
   );

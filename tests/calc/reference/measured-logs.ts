@@ -221,12 +221,12 @@ export interface Replay {
  * will end, and the band of that. The clip-on is the first reading; at most `most` readings, evenly over the time, as a
  * logger that is read seldom gives them.
  */
-export function replay(log: LogCase, measured: MeasuredCharge, nowS: number, most = 30): Replay {
+export function replay(log: LogCase, measured: MeasuredCharge, nowS: number, seed = 7, most = 30): Replay {
   const { firstVolts, afterS, rows } = measured;
   const model = planModel(logPlanInput(log, firstVolts, 1));
   const { ohmicResistanceOhm, polarisationResistanceOhm, polarisationTimeConstantS: tau } = model.groups[0]!;
   const over = log.amps * polarisationResistanceOhm * (1 - Math.exp(-afterS / tau));
-  const plan = logPlanInput(log, firstVolts - log.amps * ohmicResistanceOhm - over, 256);
+  const plan = { ...logPlanInput(log, firstVolts - log.amps * ohmicResistanceOhm - over, 256), seed };
   const option = planCharge(plan).options.find((one) => one.finish === 'on-the-mark' && one.way === 'terminals')!;
   const past = rows.filter((row) => row.s <= nowS);
   const every = Math.max(1, Math.floor(past.length / most));

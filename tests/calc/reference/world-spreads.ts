@@ -21,7 +21,8 @@ export function spreadsOf(plan: PlanInput): WorldSpreads {
     ammeterAmps: LIVE_SPREADS.ammeterAmps,
     modelRelative: LIVE_SPREADS.modelRelative,
     modelVolts: LIVE_SPREADS.modelVolts,
-    modelSoc: LIVE_SPREADS.modelSoc,
+    emptySoc: LIVE_SPREADS.emptySoc,
+    emptySocWidth: LIVE_SPREADS.emptySocWidth,
     modelCorrelationSoc: LIVE_SPREADS.modelCorrelationSoc,
   };
 }

@@ -60,8 +60,10 @@ export interface WorldSpreads {
   modelRelative: number;
   /** of the curve, V a group, */
   modelVolts: number;
-  /** and of the curve along its own axis, as a share of the capacity. */
-  modelSoc: number;
+  /** and of the curve along its own axis: a share of the capacity at empty, */
+  emptySoc: number;
+  /** and the state of charge over which it falls to 1/e. */
+  emptySocWidth: number;
   /** Width of the humps of the two, as a share of the capacity. */
   modelCorrelationSoc: number;
 }
@@ -199,7 +201,8 @@ function bent(table: OcvTable, spreads: WorldSpreads, chance: Chance): OcvTable 
   const up = smoothNoise(width, chance);
   const along = smoothNoise(width, chance);
   const soc = Array.from({ length: 51 }, (_, at) => at / 50);
-  const volts = soc.map((z) => voltsAtSoc(table, z + spreads.modelSoc * along(z)) + spreads.modelVolts * up(z));
+  const alongSd = (z: number): number => spreads.emptySoc * Math.exp(-z / spreads.emptySocWidth);
+  const volts = soc.map((z) => voltsAtSoc(table, z + alongSd(z) * along(z)) + spreads.modelVolts * up(z));
   const rises = volts.every((one, at) => at === 0 || one > volts[at - 1]!);
   return rises ? { soc, volts } : bent(table, spreads, chance);
 }
