@@ -39,6 +39,7 @@ export { learnedFactor, type ClosedCharge, type LearnedFactor } from './learn/le
 
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
+export { soonestTerminals, type SoonestTerminals } from './plan/soonest-terminals';
 export { withTimeFactor } from './plan/time-factor';
 export { judgeCheck } from './plan/judge-check';
 export { reckonCharge } from './live/reckon-charge';
