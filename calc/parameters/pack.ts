@@ -26,7 +26,7 @@ export const READING_VOLTS = 0.001;
  */
 export const BEYOND_SOC = 0.05;
 
-/** A slope taken from a curve, as a share: two curves of one chemistry differ by 10 to 15 % mid-range. */
+/** A slope taken from a curve, as a share: two tables of one chemistry differ by 1 to 20 %. */
 export const SLOPE_RELATIVE = 0.1;
 /** Charge over which the error of a curve's slope is much the same: the distance of the points of a measured table. */
 export const SLOPE_ALIKE_SOC = 0.1;
