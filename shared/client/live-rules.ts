@@ -19,6 +19,8 @@ export const liveRoots: readonly Root[] = [
   roots.board,
   roots.charges,
   roots.charge,
+  roots.repairs,
+  roots.repair,
   roots.alerts,
   roots.spares,
   roots.spare,
@@ -56,6 +58,10 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
       const known = chargeRev(event.id);
       if (known === null || known < event.rev) old(roots.charge, event.id);
       old(roots.charges);
+    },
+    'repair:changed': (event) => {
+      old(roots.repairs);
+      old(roots.repair, event.id);
     },
     'stock:changed': () => {
       old(roots.spares);

@@ -16,6 +16,8 @@ export const roots = {
   estimate: 'estimate',
   charges: 'charges',
   charge: 'charge',
+  repairs: 'repairs',
+  repair: 'repair',
   board: 'board',
   alerts: 'alerts',
   walls: 'walls',

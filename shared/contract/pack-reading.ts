@@ -52,7 +52,9 @@ export type PackReadingInput = z.infer<typeof packReadingSchema>;
 /** A reading that was wrong is not changed: it is set aside with the reason, and a new one is entered. */
 export const setReadingAsideSchema = z.object({ reason });
 
-export type TrustReason = 'flat-curve' | 'old-reading' | 'few-healthy' | 'wide-spread' | 'short-rest' | 'cold-or-warm';
+/** What takes trust from a target; 'unknown-rest': nobody noted how long the pack had rested. */
+export type TrustReason =
+  'flat-curve' | 'old-reading' | 'few-healthy' | 'wide-spread' | 'short-rest' | 'unknown-rest' | 'cold-or-warm';
 
 export interface PackReadingDto extends Omit<PackReadingInput, 'at'> {
   id: string;
