@@ -261,7 +261,15 @@ export interface TracePlanPoint {
 }
 
 export type Doubt =
-  'capacity' | 'resistance' | 'current' | 'spare-reading' | 'target-reading' | 'curve' | 'temperature';
+  | 'capacity'
+  | 'resistance'
+  | 'current'
+  | 'spare-reading'
+  | 'target-reading'
+  | 'curve'
+  | 'temperature'
+  | 'charger'
+  | 'leads';
 
 export interface Caution {
   code:

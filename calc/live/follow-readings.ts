@@ -6,9 +6,13 @@ import { PARTICLES, LIVE_SPREADS } from './live-spreads';
 import type { LivePast } from './live-rounds';
 import { isFull, Looks, type Since } from './looks';
 import { observationsOf, type Observation } from './observations';
-import { offOfVolts, oddAmps, oddCelsius, oddGroup, oddVolts, type WarmFrom } from './odd-looks';
+import { oddAmps } from './odd-amps';
+import { oddCelsius, type WarmFrom } from './odd-celsius';
+import { oddGroup } from './odd-group';
+import { offOfVolts, oddVolts } from './odd-volts';
 import { OddRuns, type OddLook } from './odd-run';
 import { ParticleSet } from './particle-set';
+import { rippleOf } from './ripple';
 import type { KeptReading } from './thin-readings';
 
 /** What the readings of a charge have made of its samples. */
@@ -40,19 +44,23 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
   };
   if (kept.length === 0 || model.samples.length === 1) return followed;
   const set = new ParticleSet(model, Math.max(PARTICLES, model.samples.length), seed);
-  const looks = new Looks(model);
+  const observations = observationsOf(model, past, kept);
+  const looks = new Looks(model, rippleOf(observations));
   const learns = new Learns(model, past, set);
   const runs = new OddRuns();
   let underCurrent: Reckoning['learned'] | null = null;
   let voltsSoc: number | null = null;
   let celsiusS: number | null = null;
   let warmFrom: WarmFrom | null = null;
-  for (const at of observationsOf(model, past, kept)) {
+  for (const at of observations) {
     const { circuit, kept: reading } = at;
     if (at.atRest) underCurrent ??= learns.now();
     const soc = movedSoc(model, at);
+    const along = voltsSoc === null ? 0 : Math.abs(soc - voltsSoc) / LIVE_SPREADS.modelCorrelationSoc;
     const since: Since = {
-      keptVolts: voltsSoc === null ? 1 : Math.exp(-Math.abs(soc - voltsSoc) / LIVE_SPREADS.modelCorrelationSoc),
+      keptVolts: Math.exp(-along),
+      // A smooth error forgets itself over the same charge with equal integrals of the two correlations.
+      smoothVolts: Math.exp((-Math.PI / 4) * along ** 2),
       keptCelsius: celsiusS === null ? 1 : Math.exp(-(reading.s - celsiusS) / LIVE_SPREADS.celsiusDriftS),
     };
     const odd: (OddLook | null)[] = [];

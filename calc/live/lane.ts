@@ -31,6 +31,8 @@ export interface Lane {
   index: number;
   step: PlannedStep;
   sign: 1 | -1;
+  /** Constant current as set, over thermal pauses its mean, positive; null: a resistor rules. */
+  setAmps: number | null;
   /** On the mark trickles on after its end without harm: amps up to here say nothing; 0: any current after the end counts. */
   trickleAmps: number;
   /** Groups whose state the current moves. */

@@ -1,4 +1,5 @@
 import type { Sample } from '../plan/samples';
+import { socOf } from '../plan/soc-of';
 import { AS_SET, type Drive } from './lane';
 import { liveSampleRun, type MovedIn } from './live-samples';
 import type { LiveModel } from './live-model';
@@ -12,6 +13,9 @@ export interface LaneAhead {
   /** When a voltage limit begins to rule, seconds from its start; null: never. */
   taperAfterS: number | null;
   secondsIn: (sample: Sample) => number;
+  /** The same with `elapsedS`, which has passed in all samples alike since they began. */
+  totalIn: (sample: Sample) => number;
+  elapsedS: number;
 }
 
 /** A round still to come, or what is left of the one that runs. */
@@ -23,7 +27,7 @@ export interface RoundAhead {
 
 export interface Ahead {
   rounds: RoundAhead[];
-  /** At the nominal end of all currents, as far as the model runs it: of the round that runs now. */
+  /** At the nominal end of all currents: charge by the plan where a later round is to come, over-voltage of the one that runs. */
   endState: ModuleState;
   /** Charge still to come, as the option counts it, Ah. */
   ampHours: number;
@@ -49,19 +53,29 @@ export function liveAhead(model: LiveModel, input: ReplayInput, past: LivePast):
       const step = option.steps[at]!;
       const run = liveSampleRun(model, option, step, moved, AS_SET);
       const nominal = run(model.nominal).seconds;
-      const seconds = step.stopS - step.startS;
+      const factor = model.input.timeFactor?.mean ?? 1;
+      const seconds = (step.stopS - step.startS) * factor;
+      const secondsIn = (sample: Sample): number => (nominal > 0 ? (run(sample).seconds * seconds) / nominal : seconds);
       ahead.ampHours += step.kind === 'pre-level' ? 0 : step.ampHours;
       return {
         stepIndex: at,
         seconds,
-        taperAfterS: step.voltageLimitAtS === null ? null : step.voltageLimitAtS - step.startS,
-        secondsIn: (sample) => (nominal > 0 ? (run(sample).seconds * seconds) / nominal : seconds),
+        taperAfterS: step.voltageLimitAtS === null ? null : (step.voltageLimitAtS - step.startS) * factor,
+        secondsIn,
+        totalIn: secondsIn,
+        elapsedS: 0,
       };
     });
     const before = past.rounds[round - 1];
     const first = option.steps[steps[0]!]!;
     const handsS = before ? first.startS - Math.max(...before.map((at) => option.steps[at]!.stopS)) : 0;
     ahead.rounds.push({ handsS, lanes });
+    // Where a later round leaves its groups is the plan's: the rest goes by the last of them.
+    const soc = [...ahead.endState.soc];
+    for (const at of steps)
+      for (const group of option.steps[at]!.groupIndexes)
+        soc[group] = socOf(model.curve, option.steps[at]!.restVoltsAfter[group]!);
+    ahead.endState = { ...ahead.endState, soc };
   });
   return ahead;
 }
@@ -78,6 +92,8 @@ function movedSoFar(model: LiveModel, past: LivePast, movedAh: readonly number[]
     done[group]! * (sample.capacityAh[group]! / model.nominal.capacityAh[group]!) + movedAh[group]! - done[group]!;
 }
 
+const none = (): number => 0;
+
 interface RestOfRound {
   lanes: LaneAhead[];
   state: ModuleState;
@@ -93,7 +109,7 @@ function restOfRound(model: LiveModel, input: ReplayInput, past: LivePast, round
   const lanes = round.lanes.map((lane, at): LaneAhead => {
     const one = round.pasts[at]!;
     if (one.endedAtS !== null || one.overrun)
-      return { stepIndex: lane.index, seconds: 0, taperAfterS: null, secondsIn: () => 0 };
+      return { stepIndex: lane.index, seconds: 0, taperAfterS: null, secondsIn: none, totalIn: none, elapsedS: 0 };
     const drive: Drive = one.noCurrent ? AS_SET : one.drive;
     const left = lane.forward(past.state, drive, null);
     for (const group of lane.touched) {
@@ -114,14 +130,16 @@ function restOfRound(model: LiveModel, input: ReplayInput, past: LivePast, round
       counts && lane.step.groupIndexes.includes(group)
         ? since.moved(sample, group) + lane.sign * run(sample).ampHours
         : before(sample, group);
+    const elapsedS = whole > 0 ? since.elapsedS : 0;
+    const totalIn = (sample: Sample): number =>
+      whole > 0 ? (run(sample).seconds * (left.seconds + elapsedS)) / whole : left.seconds;
     return {
       stepIndex: lane.index,
       seconds: left.seconds,
       taperAfterS: left.taperAfterS,
-      secondsIn: (sample) =>
-        whole > 0
-          ? Math.max(0, (run(sample).seconds * (left.seconds + since.elapsedS)) / whole - since.elapsedS)
-          : left.seconds,
+      secondsIn: (sample) => Math.max(0, totalIn(sample) - elapsedS),
+      totalIn,
+      elapsedS,
     };
   });
   return { lanes, state: { s: past.state.s, soc, over }, ampHours, moved: after };

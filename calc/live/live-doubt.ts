@@ -1,7 +1,7 @@
 import type { Doubt } from '../plan-types';
 import { DOUBT_OF_AXIS, SAMPLE_AXES, type Sample } from '../plan/samples';
 import { choleskyLower } from '../statistics/particle-weights';
-import { LEADS_AXIS, LIVE_AXES } from './live-draws';
+import { LIVE_AXES } from './live-draws';
 
 /**
  * Which number's doubt makes most of what is left of a band, by weighted samples.
@@ -40,8 +40,7 @@ export function liveDoubt(samples: readonly Sample[], weights: Float64Array, sec
 }
 
 function doubtOf(axis: number): Doubt {
-  if (axis < SAMPLE_AXES.length) return DOUBT_OF_AXIS[SAMPLE_AXES[axis]!];
-  return axis === LEADS_AXIS ? 'resistance' : 'curve';
+  return axis < SAMPLE_AXES.length ? DOUBT_OF_AXIS[SAMPLE_AXES[axis]!] : 'curve';
 }
 
 /** Least squares with a small ridge: axes that say the same share it. */

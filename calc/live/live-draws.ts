@@ -5,10 +5,10 @@ import { inverseNormal } from '../statistics/inverse-normal';
 import { latinHypercube } from '../statistics/latin-hypercube';
 import { LIVE_SPREADS } from './live-spreads';
 
-/** Axes that a running charge adds after those of the plan. */
-export const LEADS_AXIS = SAMPLE_AXES.length;
-export const MODEL_AXIS = SAMPLE_AXES.length + 1;
-export const LIVE_AXES = SAMPLE_AXES.length + 2;
+/** The axis that a running charge adds after those of the plan: what its model is off under current. */
+export const MODEL_AXIS = SAMPLE_AXES.length;
+export const LIVE_AXES = SAMPLE_AXES.length + 1;
+const LEADS_AXIS = SAMPLE_AXES.indexOf('leads');
 
 /** Sets that were drawn last: each reading of a charge starts from the same one. */
 const drawn = new Map<string, number[][]>();

@@ -1,10 +1,12 @@
 import type { ReckonInput } from '../live-types';
 import type { PlanInput, PlannedStep } from '../plan-types';
 import { planModel, type PlanModel } from '../plan/plan-model';
+import { withGuessedLeads } from '../plan/leads';
 import type { Sample } from '../plan/samples';
 import type { Lane } from './lane';
 import { resistorLane } from './resistor-lane';
 import { seriesLane } from './series-lane';
+import { slowedLane } from './slowed-lane';
 
 /** Steps that begin within this of each other are begun by the same hand, s. */
 const TOGETHER_S = 1;
@@ -23,7 +25,7 @@ export function liveModel(input: ReckonInput): PlanModel {
     module: input.module,
     spare: input.spare,
     target: input.target,
-    channels: input.channels,
+    channels: input.channels.map(withGuessedLeads),
     resistors: input.resistors,
     neighbour: null,
     workshop: input.workshop,
@@ -31,6 +33,8 @@ export function liveModel(input: ReckonInput): PlanModel {
     clipOnAtS: 0,
     celsius: input.celsius,
     seed: input.seed,
+    // What the plan was made with, whichever of type and channel it was learned for.
+    timeFactor: input.option.timeFactor ?? null,
     ...(input.samples === undefined ? {} : { samples: input.samples }),
     ...(input.spreads === undefined ? {} : { spreads: input.spreads }),
   };
@@ -51,5 +55,6 @@ export function liveRounds(steps: readonly PlannedStep[]): number[][] {
 /** @param socBefore of all groups when the step begins */
 export function laneOf(model: PlanModel, step: PlannedStep, index: number, socBefore: readonly number[]): Lane {
   const channel = model.input.channels.find((one) => one.channelId === step.channelIds[0]);
-  return channel ? seriesLane(model, step, index, channel) : resistorLane(model, step, index, socBefore);
+  const lane = channel ? seriesLane(model, step, index, channel) : resistorLane(model, step, index, socBefore);
+  return slowedLane(lane, model.input.timeFactor?.mean ?? 1);
 }

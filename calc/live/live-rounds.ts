@@ -1,8 +1,10 @@
 import type { ReckonInput, RunStretch } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import { lanePast, laneReadings, type LanePast, type LaneReading, type Stretch } from './live-past';
+import { laneReadings, type LanePast, type LaneReading, type Stretch } from './lane-past';
+import { lanePast } from './live-past';
 import { laneOf, liveRounds } from './live-model';
 import type { Lane } from './lane';
+import { overPauses } from './pauses';
 import { rested, stateAtStart, type ModuleState } from './module-state';
 
 /** Steps that were begun together, and what they have done. */
@@ -83,7 +85,9 @@ function liveRound(
     const share = lanes.length === 1 || total === 0 ? 1 / lanes.length : (lane.step.setAmps ?? 0) / total;
     const seen = laneReadings(input.readings, share, lanes.length === 1);
     // Of clips side by side it is not known which of them was switched off last.
-    return lanePast(model, lane, start, stretches, seen, untilS, saidOff && lanes.length === 1);
+    const channel = model.input.channels.find((one) => one.channelId === lane.step.channelIds[0]);
+    const meant = overPauses(seen, lane.step.setAmps, channel?.duty ?? 1);
+    return lanePast(model, lane, start, stretches, meant, untilS, saidOff && lanes.length === 1);
   });
   const movedBeforeAh = [...past.movedAh];
   past.state = merged(model, start, lanes, pasts, untilS);

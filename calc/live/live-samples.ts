@@ -1,4 +1,6 @@
 import type { PlannedStep, PlanOption } from '../plan-types';
+import { ampsWidening } from '../plan/charger-amps';
+import { leadOhmIn } from '../plan/leads';
 import type { PlanModel } from '../plan/plan-model';
 import { leadOhmOf } from './live-draws';
 import type { LiveModel } from './live-model';
@@ -7,6 +9,7 @@ import { SAMPLE_AXES, type Sample } from '../plan/samples';
 import { sampleString } from '../plan/series-step';
 import { stringCharge } from '../plan/string-charge';
 import type { Drive } from './lane';
+import { meanSetAmps, plannedSource } from './planned-source';
 
 /** Standard deviations between 10 and 90 % of a normal distribution. */
 const NORMAL_80 = 2.563;
@@ -44,39 +47,51 @@ export function liveSampleRun(
     ? step.restVoltsAfter[step.groupIndexes[0]!]!
     : step.groupIndexes.reduce((sum, group) => sum + step.restVoltsAfter[group]!, 0);
   const setVolts = step.setVolts === null ? null : step.setVolts + drive.setShiftVolts;
-  const leadResistanceOhm = channel.senses === 'module' ? 0 : channel.leadResistanceOhm;
+  const source = plannedSource(model, step, channel);
+  const unread = model.weights === null;
+  const asPlanned = leadOhmIn(channel);
   // The current that ends a taper is the plan's, whatever has been learned since.
-  const ohm = leadResistanceOhm + linkOhm + stringIn(model.planned).ohm;
+  const ohm = source.leadResistanceOhm + linkOhm + stringIn(model.planned).ohm;
+  const knownEnd = option.knownEnd === undefined ? null : option.knownEnd === 'full' ? 'charge' : 'discharge';
+  const toEnd = knownEnd === step.direction;
   const onTheMark = isOnTheMark(model, option, step, count, endVolts);
-  return sampleRun({
+  const run = sampleRun({
     model,
-    source: {
-      maxAmps: asSetAmps(step, drive) ?? channel.dischargeAmps,
-      setVolts,
-      maxWatts: channel.maxWatts,
-      leadResistanceOhm,
-      heldGroupVolts: null,
-      loadOhm: step.direction === 'discharge' ? channel.loadOhm : null,
-    },
+    source: { ...source, setVolts, maxAmps: asSetAmps(meanSetAmps(step, channel), drive) ?? source.maxAmps },
     sign,
     count,
     linkOhm,
     chargerSd: chargerSd(model, channel, count),
-    leadOhmIn: (sample) => (channel.senses === 'module' ? 0 : leadOhmOf(channel, sample)),
+    // The plan's own samples have the leads as the plan has them, those of a charge that was read as its readings do.
+    leadOhmIn: (sample) => {
+      if (channel.senses === 'module') return 0;
+      return unread ? (asPlanned?.(sample) ?? source.leadResistanceOhm) : leadOhmOf(channel, sample);
+    },
+    currentWidening: unread ? ampsWidening(channel, source.maxAmps, model.spreads.currentRelative) : 1,
     startAmps: drive.seenInTaper && ampsNow > 0 ? ampsNow : null,
-    aimVolts: endVolts,
+    aimVolts: toEnd && setVolts !== null ? setVolts : endVolts,
     first:
       step.way === 'terminals' &&
+      step.precharge !== true &&
+      knownEnd === null &&
       step.restVoltsAfter.some((volts) => Math.abs(volts - model.targetVolts) > model.toleranceVolts + 1e-5),
-    endAmps: onTheMark && step.setVolts !== null ? Math.max((sign * (step.setVolts - endVolts)) / ohm, 1e-4) : null,
+    endAmps: toEnd
+      ? Math.abs(step.endAmps)
+      : onTheMark && step.setVolts !== null
+        ? Math.max((sign * (step.setVolts - endVolts)) / ohm, 1e-4)
+        : null,
     stringIn,
   });
+  if (knownEnd === null || toEnd) return run;
+  // From a known end people stop by the count, so that its time is certain.
+  const { seconds, ampHours } = run(model.nominal);
+  return (sample) => ({ seconds, ampHours: ampHours * sample.currentFactor });
 }
 
 /** The set current where what was read is that one: how far it is off is in the samples; else as read. */
-function asSetAmps(step: PlannedStep, { maxAmps }: Drive): number | null {
-  if (step.setAmps === null || maxAmps === null) return maxAmps ?? step.setAmps;
-  return Math.abs(maxAmps / step.setAmps - 1) <= SET_SHARE ? step.setAmps : maxAmps;
+function asSetAmps(setAmps: number | null, { maxAmps }: Drive): number | null {
+  if (setAmps === null || maxAmps === null) return maxAmps ?? setAmps;
+  return Math.abs(maxAmps / setAmps - 1) <= SET_SHARE ? setAmps : maxAmps;
 }
 
 /** Set to its aim, and not above it (a trim of an on-the-mark charge may go over where the mark cannot be held). */

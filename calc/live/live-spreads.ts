@@ -17,9 +17,10 @@ export const LIVE_SPREADS = {
   /**
    * The curve along its own axis, as a share of the capacity: where a cell is empty differs from the cell of the table, and
    * where the curve is steep that is many millivolts. It came in after a measured charge from nearly empty (LMO blend, 15.3 A)
-   * had been read as a capacity 8 % too high by the volts of its steep beginning.
+   * had been read as a capacity 8 % too high by the volts of its steep beginning. Its size is a guess: with nothing
+   * it did that, and with more the bands hold more than they promise near the end of a charge.
    */
-  modelSoc: 0.005,
+  modelSoc: 0.0045,
   /** The model's error forgets itself over this much charge, as a share of the capacity: the width of a hump of a curve. */
   modelCorrelationSoc: 0.08,
   /** Flicker of a terminal voltmeter between two looks, V, beside its last digit. */

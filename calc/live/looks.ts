@@ -21,6 +21,8 @@ export interface TerminalLook extends Look {
 export interface Since {
   /** Share of the model's error that is left since the last look at a voltage. */
   keptVolts: number;
+  /** The same for the curve's error, which cannot jump: smooth over the charge. */
+  smoothVolts: number;
   /** Share of the thermometer's that is left. */
   keptCelsius: number;
 }
@@ -28,9 +30,20 @@ export interface Since {
 /** A current this near to the full one is that one. */
 const FULL_SHARE = 0.97;
 
-/** The source gives what it is set to: no voltage limit rules. */
-export const isFull = ({ fullAmps }: Circuit, amps: number): boolean =>
-  fullAmps === null || amps >= FULL_SHARE * fullAmps;
+/** A current this near to what a warm charger gives is that, as a share of it. */
+const DERATED_SHARE = 0.05;
+
+/** What the source gives where no voltage limit rules, A: as set, or where that is what was read what it gives when warm. */
+function fullNear({ fullAmps, channel, knot }: Circuit, amps: number): number | null {
+  const warm = channel.derating && !knot.tapering ? channel.maxAmps * channel.derating.ampsShare : Infinity;
+  return fullAmps !== null && warm < fullAmps && Math.abs(amps / warm - 1) <= DERATED_SHARE ? warm : fullAmps;
+}
+
+/** The source gives what it is set to, to a step of its display, or what it has when warm: no voltage limit rules. */
+export function isFull(circuit: Circuit, amps: number): boolean {
+  const full = fullNear(circuit, amps);
+  return full === null || amps >= FULL_SHARE * full - (circuit.channel.displayStepAmps ?? 0);
+}
 
 /** The mean rest voltage of the groups of a circuit in one sample, V, as its true voltmeter would have it. */
 function restVoltsIn(
@@ -56,7 +69,11 @@ export class Looks {
   private readonly rest: ReturnType<typeof restVoltsIn>;
   private readonly nominalOhm: number;
 
-  constructor(private readonly model: PlanModel) {
+  /** @param ripple variance of the current between two looks, as a share of it, by reading */
+  constructor(
+    private readonly model: PlanModel,
+    private readonly ripple: ReadonlyMap<Observation, number>,
+  ) {
     this.rest = restVoltsIn(model);
     this.nominalOhm = model.nominal.longOhm[0]!;
   }
@@ -132,6 +149,7 @@ export class Looks {
       ...(place === null && amps > 0 ? { otherResidual: one(atModule) } : {}),
       sharedSd: this.modelSd(observation, circuit),
       kept: since.keptVolts,
+      keptSmooth: since.smoothVolts,
       ownVariance: ammeter ** 2 + digit ** 2 + unknownMeter ** 2 + guessed ** 2,
       volts,
       expected: (sample) => count * (place === 'module' ? atModule : atSupply)(sample),
@@ -175,15 +193,18 @@ export class Looks {
   }
 
   /** The current while no voltage limit rules, as a share of what is set. */
-  amps({ kept, circuit }: Observation): Look | null {
-    const set = circuit?.fullAmps ?? null;
-    if (kept.amps === null || set === null) return null;
+  amps(observation: Observation): Look | null {
+    const { kept, circuit } = observation;
+    if (kept.amps === null || circuit === null) return null;
+    const set = fullNear(circuit, kept.amps);
+    if (set === null) return null;
+    const digitAmps = (circuit.channel.displayStepAmps ?? 0) / Math.sqrt(12);
     return {
       memory: 'amps',
       residual: (sample) => kept.amps! / set - sample.currentFactor,
       sharedSd: LIVE_SPREADS.ammeterRelative,
       kept: 1,
-      ownVariance: (LIVE_SPREADS.ammeterAmps / set) ** 2,
+      ownVariance: (LIVE_SPREADS.ammeterAmps / set) ** 2 + (digitAmps / set) ** 2 + (this.ripple.get(observation) ?? 0),
     };
   }
 

@@ -1,7 +1,7 @@
 import { voltsAtSoc } from '../curve/ocv';
 import type { ChannelParameters } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
-import type { Knot } from './live-past';
+import type { Knot } from './lane-past';
 import { movedAfter, type LivePast, type LiveRound } from './live-rounds';
 import type { Lane } from './lane';
 import { rested } from './module-state';
@@ -65,7 +65,7 @@ export function observationsOf(model: PlanModel, past: LivePast, kept: readonly 
         kept: reading,
         movedAh: movedAfter(model, round.movedBeforeAh, lane, knot.deliveredAh),
         over: knot.state.over,
-        circuit: channel && !knot.over ? circuitOf(model, lane, channel, knot) : null,
+        circuit: channel && !knot.over && !knot.paused ? circuitOf(model, lane, channel, knot) : null,
         atRest: knot.over,
         ownHeatKelvin: warmed({ s: reading.s, amps: knot.amps }),
       });

@@ -31,6 +31,8 @@ export interface Look {
   sharedSd: number;
   /** Share of it that is left since the last reading of the kind. */
   kept: number;
+  /** The same where it can only change smoothly, for what is a jump; left out: as `kept`. */
+  keptSmooth?: number;
   /** Of this reading alone, variance. */
   ownVariance: number;
 }
@@ -55,6 +57,8 @@ export class ParticleSet {
   private readonly prior: Float64Array;
   private readonly off: Float64Array;
   private readonly log: Float64Array;
+  /** Of the look that was asked for last and these samples: what was read less what each has, and less the other. */
+  private asked: { look: Look; residual: Float64Array; other: Float64Array | null } | null = null;
   /** Any reading was taken in. */
   read = false;
 
@@ -95,7 +99,7 @@ export class ParticleSet {
   }
 
   /** Variance of the shared error before a look, of the whole of it. */
-  private before({ memory, kept }: Look): number {
+  private before({ memory }: Look, kept: number): number {
     const known = this.variance[MEMORIES[memory]]!;
     return Number.isNaN(known) ? 1 : kept ** 2 * known + 1 - kept ** 2;
   }
@@ -107,28 +111,42 @@ export class ParticleSet {
   offOf(look: Look, jumpSd: number): { level: number; jump: number | null } {
     const column = MEMORIES[look.memory];
     const nearer = this.nearerResidual(look);
-    const level = this.moments(nearer);
+    const level = this.moments((_, at) => nearer[at]!);
     const whole = Math.sqrt(level.variance + look.sharedSd ** 2 + look.ownVariance);
     if (Number.isNaN(this.variance[column]!)) return { level: level.mean / whole, jump: null };
-    const step = this.moments(
-      (sample, at) => nearer(sample) - look.sharedSd * look.kept * this.memory[at * MEMORY_COUNT + column]!,
-    );
-    const small = Math.sqrt(step.variance + look.sharedSd ** 2 * this.before(look) + look.ownVariance + jumpSd ** 2);
+    const kept = look.keptSmooth ?? look.kept;
+    const step = this.moments((_, at) => nearer[at]! - look.sharedSd * kept * this.memory[at * MEMORY_COUNT + column]!);
+    const shared = look.sharedSd ** 2 * this.before(look, kept);
+    const small = Math.sqrt(step.variance + shared + look.ownVariance + jumpSd ** 2);
     return { level: level.mean / whole, jump: step.mean / small };
   }
 
-  private nearerResidual({ residual, otherResidual }: Look): (sample: Sample) => number {
-    if (!otherResidual) return residual;
-    return Math.abs(this.moments(residual).mean) <= Math.abs(this.moments(otherResidual).mean)
-      ? residual
-      : otherResidual;
+  private nearerResidual(look: Look): Float64Array {
+    const { residual, other } = this.residualsOf(look);
+    if (other === null) return residual;
+    const far = (of: Float64Array): number => Math.abs(this.moments((_, at) => of[at]!).mean);
+    return far(residual) <= far(other) ? residual : other;
+  }
+
+  /** A look is judged before it is taken in: what the samples have for it is worked out once. */
+  private residualsOf(look: Look): { residual: Float64Array; other: Float64Array | null } {
+    if (this.asked?.look === look) return this.asked;
+    const { residual, otherResidual } = look;
+    const values = new Float64Array(this.count);
+    const others = otherResidual ? new Float64Array(this.count) : null;
+    for (let at = 0; at < this.count; at += 1) {
+      values[at] = residual(this.samples[at]!);
+      if (others) others[at] = otherResidual!(this.samples[at]!);
+    }
+    this.asked = { look, residual: values, other: others };
+    return this.asked;
   }
 
   /** Reweights by a look; resamples with jitter where the effective sample size falls below half. */
   take(look: Look): void {
     this.read = true;
     const column = MEMORIES[look.memory];
-    const before = this.before(look);
+    const before = this.before(look, look.kept);
     const variance = look.sharedSd ** 2 * before + look.ownVariance;
     let left = 1;
     this.lookAt(look, variance);
@@ -151,18 +169,17 @@ export class ParticleSet {
   private lookAt(look: Look, variance: number): void {
     const column = MEMORIES[look.memory];
     const known = !Number.isNaN(this.variance[column]!);
-    const { residual, otherResidual } = look;
+    const { residual, other: others } = this.residualsOf(look);
     for (let at = 0; at < this.count; at += 1) {
-      const sample = this.samples[at]!;
       const prior = known ? look.kept * this.memory[at * MEMORY_COUNT + column]! : 0;
       this.prior[at] = prior;
-      const off = residual(sample) - look.sharedSd * prior;
-      if (!otherResidual) {
+      const off = residual[at]! - look.sharedSd * prior;
+      if (others === null) {
         this.off[at] = off;
         this.log[at] = (-0.5 * off * off) / variance;
         continue;
       }
-      const other = otherResidual(sample) - look.sharedSd * prior;
+      const other = others[at]! - look.sharedSd * prior;
       const [near, far] = Math.abs(off) <= Math.abs(other) ? [off, other] : [other, off];
       const ratio = Math.exp((-0.5 * (far * far - near * near)) / variance);
       this.off[at] = (near + ratio * far) / (1 + ratio);
@@ -244,6 +261,7 @@ export class ParticleSet {
       this.samples[at] = liveSample(this.model, draws);
     }
     this.memory = memory;
+    this.asked = null;
     weights.fill(1 / count);
   }
 }

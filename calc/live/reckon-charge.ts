@@ -1,20 +1,20 @@
-import type { LiveReading, ReckonInput, Reckoning } from '../live-types';
+import type { ReckonInput, Reckoning } from '../live-types';
 import { dominantDoubt } from '../plan/doubt-shares';
-import { minimumRestS } from '../plan/minimum-rest';
 import type { PlanModel } from '../plan/plan-model';
 import { socOf } from '../plan/soc-of';
 import type { Band, PlanOption } from '../plan-types';
 import { quantile } from '../statistics/quantile';
 import { weightedQuantiles } from '../statistics/weighted-quantile';
-import { settleSeconds } from '../step/settle';
 import { expectedAt } from './expected-at';
 import { toGroups } from './live-groups';
 import { liveAhead, type Ahead } from './live-ahead';
 import { liveModel, type LiveModel } from './live-model';
-import { livePast, type LivePast, type LiveRound, type ReplayInput } from './live-rounds';
-import { endOf, liveSegments, type AheadClock } from './live-segments';
-import { rested } from './module-state';
+import { livePast, type ReplayInput } from './live-rounds';
+import { endOf, liveSegments } from './live-segments';
+import { finishOf, fixedClock, likelyClock, shorten, stateBack } from './live-clock';
+import { isOverrun, stageOf, taperOf } from './live-stage';
 import { followReadings } from './follow-readings';
+import { learnedTimes } from './learned-times';
 import { learnedModel } from './learned-model';
 import { liveDoubt } from './live-doubt';
 import { thinReadings } from './thin-readings';
@@ -49,7 +49,8 @@ export function reckonCharge(input: ReckonInput): Reckoning {
   const flowsOn = !over && ahead.rounds.length === 1 && isOverrun(current);
 
   const fixed = fixedClock(model, input, replay, past, ahead, over);
-  const seconds = model.samples.map((sample) => finishOf(fixed, ahead, (lane) => lane.secondsIn(sample)));
+  const secondsIn = learnedTimes(planned, model, replay, ahead);
+  const seconds = model.samples.map((sample, at) => finishOf(fixed, ahead, (lane) => secondsIn(lane, sample, at)));
   const byS = bandOf(seconds, model.weights);
   const clock = likelyClock(fixed, ahead, byS.p50);
   const readyS = shifted(byS, clock.readyS - byS.p50);
@@ -128,136 +129,3 @@ function bandOf(seconds: readonly number[], weights: Float64Array | null): Band 
 }
 
 const shifted = ({ p10, p50, p90 }: Band, byS: number): Band => ({ p10: p10 + byS, p50: p50 + byS, p90: p90 + byS });
-
-interface FixedClock {
-  nowS: number;
-  /** Last current where it is over; else null. */
-  currentEndS: number | null;
-  /** The first round still to come begins here: now, or with the hands after it. */
-  restS: number;
-  checkS: number;
-  waitS: number;
-  settledAtS: number | null;
-}
-
-function fixedClock(
-  model: PlanModel,
-  input: ReckonInput,
-  replay: ReplayInput,
-  past: LivePast,
-  ahead: Ahead,
-  over: boolean,
-): FixedClock {
-  const { nowS, option } = input;
-  const { workshop } = model.input;
-  const current = past.begun[past.begun.length - 1]!;
-  const isOver = over || ahead.rounds.length === 0;
-  const currentEndS = isOver
-    ? over
-      ? Math.min(input.currentOffAtS!, endOf(current) ?? Infinity)
-      : (endOf(current) ?? nowS)
-    : null;
-  const endState = isOver ? stateBack(model, replay, past, currentEndS!, currentEndS!) : ahead.endState;
-  const tau = model.groups.map((group) => group.polarisationTimeConstantS);
-  const lastSteps = past.rounds[past.rounds.length - 1]!.length;
-  const offS = lastSteps * workshop.clipOffS + (option.busbarsOff ? workshop.busbarsS : 0);
-  const celsius = lastCelsius(input.readings, nowS) ?? model.celsius;
-  const restS = Math.max(
-    minimumRestS({ input: model.input, celsius }, endState.soc),
-    settleSeconds(endState.over, tau, model.settledVolts(model.groups.length)),
-    offS,
-  );
-  const settledAtS =
-    currentEndS === null
-      ? null
-      : restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, replay, past, currentEndS, s))
-          .settledAtS;
-  return { nowS, currentEndS, restS, checkS: workshop.checkS, waitS: 0, settledAtS };
-}
-
-/** The module at an instant of the rest: replayed to the end of current, then at rest. */
-function stateBack(model: PlanModel, replay: ReplayInput, past: LivePast, currentEndS: number, s: number) {
-  if (s >= past.state.s) return past.state;
-  const atEnd = livePast(model, replay, currentEndS);
-  return rested(model, atEnd.state, Math.max(s, currentEndS));
-}
-
-type SecondsOf = (lane: Ahead['rounds'][number]['lanes'][number]) => number;
-
-function finishOf(fixed: FixedClock, ahead: Ahead, secondsOf: SecondsOf): number {
-  if (fixed.currentEndS !== null) return restEnd(fixed, fixed.currentEndS) + fixed.checkS;
-  let at = fixed.nowS;
-  for (const round of ahead.rounds) at += round.handsS + Math.max(...round.lanes.map(secondsOf));
-  return at + fixed.restS + fixed.checkS;
-}
-
-const restEnd = (fixed: FixedClock, currentEndS: number): number =>
-  fixed.settledAtS === null ? currentEndS + fixed.restS : Math.min(currentEndS + fixed.restS, fixed.settledAtS);
-
-/**
- * The middle of the samples and the nominal run may end minutes apart, and the nominal one says when the current is over. What
- * is left of it is therefore not stretched or pressed further than this: the likely end slides over to the nominal one as that
- * comes near, in place of standing at 'now' until it is there.
- */
-const LEAST_STRETCH = 0.5;
-
-const clamp = (value: number, least: number, most: number): number => Math.min(most, Math.max(least, value));
-
-/** The likely course: what is to come by the nominal run, stretched so that it is ready at the middle of the band. */
-function likelyClock(fixed: FixedClock, ahead: Ahead, p50: number): AheadClock {
-  if (fixed.currentEndS !== null) {
-    const restEndS = restEnd(fixed, fixed.currentEndS);
-    return { rounds: [], currentEndS: fixed.currentEndS, restEndS, readyS: restEndS + fixed.checkS };
-  }
-  const nominal = finishOf(fixed, ahead, (lane) => lane.seconds);
-  const flowing = ahead.rounds.reduce((sum, round) => sum + Math.max(...round.lanes.map((lane) => lane.seconds)), 0);
-  const stretch = flowing > 0 ? clamp(1 + (p50 - nominal) / flowing, LEAST_STRETCH, 1 / LEAST_STRETCH) : 1;
-  let at = fixed.nowS;
-  const rounds = ahead.rounds.map((round) => {
-    const last = round.lanes.reduce((longest, lane) => (lane.seconds > longest.seconds ? lane : longest));
-    const fromS = at + round.handsS;
-    const toS = fromS + last.seconds * stretch;
-    const one = {
-      handsFromS: at,
-      fromS,
-      taperS: last.taperAfterS === null ? null : fromS + last.taperAfterS * stretch,
-      toS,
-    };
-    at = toS;
-    return one;
-  });
-  return { rounds, currentEndS: at, restEndS: at + fixed.restS, readyS: at + fixed.restS + fixed.checkS };
-}
-
-function shorten(clock: AheadClock, fixed: FixedClock): void {
-  clock.restEndS = restEnd(fixed, clock.currentEndS);
-  clock.readyS = clock.restEndS + fixed.checkS;
-}
-
-const isOverrun = (round: LiveRound): boolean => round.open && round.pasts.some((one) => one.overrun);
-
-function taperOf(
-  current: LiveRound,
-  running: AheadClock['rounds'][number] | undefined,
-  isResting: boolean,
-): number | null {
-  const past = current.pasts.map((one) => one.taperAtS);
-  if (past.every((one) => one !== null)) return Math.max(...past.map((one) => one!));
-  if (isResting || current.endedAtS !== null) return null;
-  return running?.taperS ?? null;
-}
-
-function stageOf(at: {
-  isResting: boolean;
-  waits: boolean;
-  tapering: boolean;
-  nowS: number;
-  restEndS: number;
-}): Reckoning['stage'] {
-  if (at.isResting) return at.nowS >= at.restEndS ? 'check-due' : 'resting';
-  return at.tapering ? 'tapering' : 'charging';
-}
-
-function lastCelsius(readings: readonly LiveReading[], nowS: number): number | null {
-  return readings.findLast((reading) => reading.celsius !== null && reading.s <= nowS)?.celsius ?? null;
-}

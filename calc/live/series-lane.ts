@@ -6,6 +6,7 @@ import type { PlanModel } from '../plan/plan-model';
 import type { CellGroup, Source } from '../types';
 import type { Drive, Forward, Lane } from './lane';
 import type { ModuleState } from './module-state';
+import { meanSetAmps, plannedSource } from './planned-source';
 
 /** In other tapers the current at the planned end stands in for a target that a shifted set voltage never quite reaches. */
 const END_AMPS_SHARE = 0.98;
@@ -22,13 +23,17 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
   const joined = step.way === 'paralleled';
   const { module } = model.input;
   const linkOhm = step.way === 'terminals' ? module.linkResistanceOhm : 0;
-  const source = plannedSource(step, channel);
+  const source = plannedSource(model, step, channel);
+  const setAmps = meanSetAmps(step, channel);
   const aimVolts = joined
     ? step.restVoltsAfter[step.groupIndexes[0]!]!
     : step.groupIndexes.reduce((sum, group) => sum + step.restVoltsAfter[group]!, 0);
   const groupsOf = (state: ModuleState): CellGroup[] => {
     const groups = step.groupIndexes.map((group) => ({
-      ...model.groups[group]!,
+      capacityAh: model.groups[group]!.capacityAh,
+      ohmicResistanceOhm: model.groups[group]!.ohmicResistanceOhm,
+      polarisationResistanceOhm: model.groups[group]!.polarisationResistanceOhm,
+      polarisationTimeConstantS: model.groups[group]!.polarisationTimeConstantS,
       restVolts: voltsAtSoc(model.curve, state.soc[group]!),
       polarisationVolts: state.over[group]!,
     }));
@@ -51,7 +56,7 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
 
   const count = joined ? 1 : step.groupIndexes.length;
   const onTheMark = source.setVolts !== null && Math.abs(source.setVolts - aimVolts) <= model.toleranceVolts * count;
-  const tapers = source.setVolts !== null && endsByAmps(step);
+  const tapers = source.setVolts !== null && endsByAmps(step, setAmps);
   const byAmps = onTheMark && tapers;
   const forward = (state: ModuleState, drive: Drive, maxSeconds: number | null, onwards = false): Forward => {
     const groups = groupsOf(state);
@@ -105,6 +110,7 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     index,
     step,
     sign,
+    setAmps,
     trickleAmps: onTheMark ? TRICKLE * Math.abs(step.endAmps) : 0,
     touched: step.groupIndexes,
     forward,
@@ -191,17 +197,6 @@ function meanOver(state: ModuleState, step: PlannedStep): number {
 }
 
 /** A step that was planned to end in a taper and not in constant current. */
-function endsByAmps(step: PlannedStep): boolean {
-  return step.voltageLimitAtS !== null && step.setAmps !== null && Math.abs(step.endAmps) < step.setAmps * 0.9;
-}
-
-function plannedSource(step: PlannedStep, channel: ChannelParameters): Source {
-  return {
-    maxAmps: step.setAmps ?? channel.dischargeAmps,
-    setVolts: step.setVolts,
-    maxWatts: channel.maxWatts,
-    leadResistanceOhm: channel.senses === 'module' ? 0 : channel.leadResistanceOhm,
-    heldGroupVolts: null,
-    loadOhm: step.direction === 'discharge' ? channel.loadOhm : null,
-  };
+function endsByAmps(step: PlannedStep, setAmps: number | null): boolean {
+  return step.voltageLimitAtS !== null && setAmps !== null && Math.abs(step.endAmps) < setAmps * 0.9;
 }

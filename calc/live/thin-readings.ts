@@ -1,5 +1,5 @@
 import type { LiveReading } from '../live-types';
-import type { LaneReading } from './live-past';
+import type { LaneReading } from './lane-past';
 
 /** A reading that counts, and what it stands for. */
 export interface KeptReading extends LaneReading {
@@ -49,7 +49,8 @@ export function thinReadings(readings: readonly LiveReading[], nowS: number): Ke
     thinned.push({
       index: thinned.length,
       s: reading.s,
-      amps: reading.amps,
+      // A discharge is read as a negative current; a lane counts its own way.
+      amps: reading.amps === null ? null : Math.abs(reading.amps),
       terminalVolts: reading.terminalVolts,
       ...(own === 1 && between > 1 ? { ampSeconds } : {}),
       reading,

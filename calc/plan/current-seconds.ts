@@ -1,3 +1,5 @@
+import { findRoot } from '../step/find-root';
+
 /**
  * What limits the current of one sample, seen over the ampere-hours already moved: a chain of limits with one long
  * resistance (R0 + R1, links, leads) in place of the RC pair.
@@ -24,11 +26,18 @@ export interface CurrentLaw {
 /** Nodes over a stretch in which the current changes; with 16 a taper to a fiftieth is within 0.3 % of the limit. */
 const NODES = 16;
 
+/** The end of the constant current is found to within this share of the charge. */
+const CLOSE_SHARE = 1e-8;
+
 /** Amps after so many ampere-hours, positive in the law's own direction. */
-export function ampsAfter(law: CurrentLaw, ampHours: number): number {
+export const ampsAfter = (law: CurrentLaw, ampHours: number): number =>
+  Math.max(Math.min(law.maxAmps, limitedAmps(law, ampHours)), law.leastAmps);
+
+/** Amps that everything but the source's own most would let through. */
+function limitedAmps(law: CurrentLaw, ampHours: number): number {
   const open = law.openVolts(ampHours);
   const { sign, resistanceOhm: ohm } = law;
-  let amps = law.maxAmps;
+  let amps = Infinity;
   if (law.loadOhm !== null) {
     const difference = law.otherVolts === undefined ? open : (law.otherVolts(ampHours) - open) * sign;
     amps = Math.min(amps, difference / (ohm + law.loadOhm));
@@ -38,7 +47,7 @@ export function ampsAfter(law: CurrentLaw, ampHours: number): number {
     const root = open * open + sign * 4 * ohm * law.maxWatts;
     if (root > 0) amps = Math.min(amps, (2 * law.maxWatts) / (open + Math.sqrt(root)));
   }
-  return Math.max(amps, law.leastAmps);
+  return amps;
 }
 
 /**
@@ -74,14 +83,9 @@ function meanAmps(first: number, second: number): number {
   return (first - second) / Math.log(ratio);
 }
 
-/** Ampere-hours at which the current begins to fall, by bisection: the currents are monotone over a charge. */
+/** Ampere-hours at which the current begins to fall: the currents are monotone over a charge. */
 function endOfConstantCurrent(law: CurrentLaw, ampHours: number): number {
-  let low = 0;
-  let high = ampHours;
-  for (let step = 0; step < 24; step += 1) {
-    const middle = (low + high) / 2;
-    if (ampsAfter(law, middle) >= law.maxAmps) low = middle;
-    else high = middle;
-  }
-  return low;
+  const over = (at: number): number => limitedAmps(law, at) - law.maxAmps;
+  const last = over(ampHours);
+  return last >= 0 ? ampHours : findRoot(over, 0, over(0), ampHours, last, CLOSE_SHARE * ampHours);
 }

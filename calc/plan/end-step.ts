@@ -4,10 +4,10 @@ import type { ChannelParameters, Way } from '../plan-types';
 import { setVoltageCap } from '../set-voltage-cap';
 import type { DraftStep, NotPossible } from './draft';
 import type { PlanModel } from './plan-model';
-import { channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
-import { leadOhmOf } from './leads';
+import { ampsWidening, channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
+import { leadOhmIn, leadOhmOf } from './leads';
 import { chargerSd, sampleRun } from './sample-run';
-import { groupsAt, sampleString } from './series-step';
+import { groupsAt, prechargeAmps, sampleString } from './series-step';
 import { limitText } from './words';
 
 /** Current at which a taper counts as full or empty, as a multiple of the capacity per hour: C/20, common practice. */
@@ -44,6 +44,7 @@ export function endStep(
         Math.min(
           channelAmps(channel, channel.maxAmps, model.input.celsius),
           module.maxChargeAmps * moduleCurrentShare(module, model.celsius),
+          prechargeAmps(model, direction, groups) ?? Infinity,
         ),
       )
     : snappedAmps(channel, Math.min(channel.dischargeAmps ?? channel.maxAmps, module.maxDischargeAmps));
@@ -106,8 +107,11 @@ export function endStep(
 
   const socAfter = [...soc];
   groupIndexes.forEach((group, at) => (socAfter[group] = reached[at]!));
+  const leads = leadOhmIn(channel);
   const run = sampleRun({
     model,
+    ...(leads === undefined ? {} : { leadOhmIn: leads }),
+    currentWidening: ampsWidening(channel, source.maxAmps, model.spreads.currentRelative),
     source,
     sign,
     count,

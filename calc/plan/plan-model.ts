@@ -17,7 +17,11 @@ const SETTLED_SHARE = 1 / 3;
 /** On the mark ends within this share of the tolerance. */
 const ON_THE_MARK_SHARE = 1 / 3;
 
-export const DEFAULT_SAMPLES = 64;
+/**
+ * Type 7 quantiles of n even points are drawn to the middle: of 64 the 10 and 90 % lines hold 78.7 % of a distribution, of 96
+ * 79.2 %.
+ */
+export const DEFAULT_SAMPLES = 96;
 
 /** What all ways of one plan start from: the nominal module at the clip-on, and its samples. */
 export interface PlanModel {

@@ -4,7 +4,7 @@ import type { Doubt, Spreads } from '../plan-types';
 import { socOf } from './soc-of';
 import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
 import { inverseNormal } from '../statistics/inverse-normal';
-import { latinHypercube } from '../statistics/latin-hypercube';
+import { latinHypercube, latinHypercubeNormal } from '../statistics/latin-hypercube';
 import { normalCdf } from '../statistics/normal-cdf';
 
 /** What one axis of the sample set stands for. */
@@ -22,8 +22,12 @@ const AXES = [
   'charger-meter',
   'curve',
   'temperature',
+  'leads',
 ] as const;
 type Axis = (typeof AXES)[number];
+
+/** The leads, last of the axes, have a draw of their own, so that they came in without moving the others. */
+const LEAD_SEED_STEP = 7919;
 
 /** The number a person would measure better to be rid of an axis. */
 export const DOUBT_OF_AXIS: Record<Axis, Doubt> = {
@@ -37,9 +41,10 @@ export const DOUBT_OF_AXIS: Record<Axis, Doubt> = {
   'target-meter': 'target-reading',
   'target-scatter': 'target-reading',
   'target-hysteresis': 'curve',
-  'charger-meter': 'target-reading',
+  'charger-meter': 'charger',
   curve: 'curve',
   temperature: 'temperature',
+  leads: 'leads',
 };
 
 /** The module as one sample sees it. */
@@ -91,7 +96,10 @@ export interface SampleBasis {
  */
 export function drawSamples(basis: SampleBasis, count: number, seed: number): Sample[] {
   if (count === 1) return [sampleOf(basis, new Array<number>(AXES.length).fill(0))];
-  return latinHypercube(count, AXES.length, seed).map((point) => sampleOf(basis, point.map(inverseNormal)));
+  const leads = latinHypercubeNormal(count, 1, seed + LEAD_SEED_STEP);
+  return latinHypercube(count, AXES.length - 1, seed).map((point, at) =>
+    sampleOf(basis, [...point.map(inverseNormal), ...leads[at]!]),
+  );
 }
 
 /** The axes in the order of `Sample.draws`. */
@@ -101,39 +109,57 @@ const PLACE = Object.fromEntries(AXES.map((axis, at) => [axis, at])) as Record<A
 /** The module of one set of standard normal draws, in the order of `SAMPLE_AXES`. */
 export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
   const { spreads, curve } = basis;
-  const normal = (axis: Axis): number => draws[PLACE[axis]]!;
-  const hysteresis = (axis: Axis): number =>
-    spreads.hysteresisVolts === 0 ? 0 : spreads.hysteresisVolts * (2 * normalCdf(normal(axis)) - 1);
-  const capacityFactor = Math.exp(spreads.capacityRelative * normal('capacity'));
-  const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * normal('temperature')));
+  const count = basis.readVolts.length;
+  const capacityFactor = Math.exp(spreads.capacityRelative * draws[PLACE.capacity]!);
+  const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * draws[PLACE.temperature]!));
   const resistanceFactor =
-    Math.exp(spreads.resistanceRelative * normal('resistance')) *
+    Math.exp(spreads.resistanceRelative * draws[PLACE.resistance]!) *
     (resistanceTemperatureFactor(celsius) / resistanceTemperatureFactor(basis.celsius));
-  const curveShift = -spreads.curveVolts * normal('curve');
-  const spareMeter = spreads.meterVolts * normal('spare-meter');
-  const targetMeter = basis.sameMeter ? spareMeter : spreads.meterVolts * normal('target-meter');
+  const curveShift = -spreads.curveVolts * draws[PLACE.curve]!;
+  const spareMeter = spreads.meterVolts * draws[PLACE['spare-meter']]!;
+  const targetMeter = basis.sameMeter ? spareMeter : spreads.meterVolts * draws[PLACE['target-meter']]!;
   const spareShift =
     curveShift +
     spareMeter +
-    (spreads.readingVolts * normal('spare-scatter')) / Math.sqrt(basis.readVolts.length) +
-    hysteresis('spare-hysteresis');
+    (spreads.readingVolts * draws[PLACE['spare-scatter']]!) / Math.sqrt(count) +
+    hysteresisOf(spreads, draws[PLACE['spare-hysteresis']]!);
+  const targetScatter = draws[PLACE['target-scatter']]!;
   const bySoc = basis.targetSoc ?? null;
-  const ownTargetSoc = bySoc === null ? null : bySoc.soc + bySoc.sd * normal('target-scatter');
+  const ownTargetSoc = bySoc === null ? null : bySoc.soc + bySoc.sd * targetScatter;
   const targetShiftVolts =
     ownTargetSoc !== null
       ? voltsAtSoc(curve, ownTargetSoc) - basis.targetVolts
-      : curveShift + targetMeter + spreads.targetVolts * normal('target-scatter') + hysteresis('target-hysteresis');
-  const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * normal('self-discharge'));
+      : curveShift +
+        targetMeter +
+        spreads.targetVolts * targetScatter +
+        hysteresisOf(spreads, draws[PLACE['target-hysteresis']]!);
+  const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * draws[PLACE['self-discharge']]!);
+  const startSoc = new Array<number>(count);
+  const capacityAh = new Array<number>(count);
+  const longOhm = new Array<number>(count);
+  for (let group = 0; group < count; group += 1) {
+    const volts = basis.readVolts[group]!;
+    // Groups read alike stand alike.
+    startSoc[group] =
+      group > 0 && volts === basis.readVolts[group - 1]!
+        ? startSoc[group - 1]!
+        : socOf(curve, volts + spareShift) - lost;
+    capacityAh[group] = basis.capacityAh[group]! * capacityFactor;
+    longOhm[group] = basis.longOhm[group]! * resistanceFactor;
+  }
   return {
-    startSoc: basis.readVolts.map((volts) => socOf(curve, volts + spareShift) - lost),
+    startSoc,
     targetSoc: ownTargetSoc ?? socOf(curve, basis.targetVolts + targetShiftVolts),
-    capacityAh: basis.capacityAh.map((ampHours) => ampHours * capacityFactor),
-    longOhm: basis.longOhm.map((ohm) => ohm * resistanceFactor),
-    currentFactor: Math.exp(spreads.currentRelative * normal('current')),
+    capacityAh,
+    longOhm,
+    currentFactor: Math.exp(spreads.currentRelative * draws[PLACE.current]!),
     spareShiftVolts: spareShift,
     targetShiftVolts,
     curveShiftVolts: curveShift,
-    chargerDraw: normal('charger-meter'),
+    chargerDraw: draws[PLACE['charger-meter']]!,
     draws,
   };
 }
+
+const hysteresisOf = ({ hysteresisVolts }: Spreads, draw: number): number =>
+  hysteresisVolts === 0 ? 0 : hysteresisVolts * (2 * normalCdf(draw) - 1);

@@ -98,11 +98,16 @@ export function seriesStep(input: SeriesStepInput): DraftStep | NotPossible {
 
 /** Amps of a step: what was asked; else C/10 throughout where a group is still below its pre-charge volts. */
 function prechargeLimit({ mostAmps, direction, groups, model }: SeriesStepInput): { mostAmps?: number } {
-  if (mostAmps !== undefined) return { mostAmps };
+  const most = mostAmps ?? prechargeAmps(model, direction, groups);
+  return most === null ? {} : { mostAmps: most };
+}
+
+/** C/10 of the smallest group that is still below its pre-charge volts, A; null: none is. */
+export function prechargeAmps(model: PlanModel, direction: Direction, groups: readonly CellGroup[]): number | null {
   const below = model.input.module.prechargeBelowVolts ?? null;
-  if (below === null || direction !== 'charge') return {};
+  if (below === null || direction !== 'charge') return null;
   const low = groups.filter((group) => group.restVolts < below - 1e-9);
-  return low.length === 0 ? {} : { mostAmps: PRECHARGE_RATE_C * Math.min(...low.map((group) => group.capacityAh)) };
+  return low.length === 0 ? null : PRECHARGE_RATE_C * Math.min(...low.map((group) => group.capacityAh));
 }
 
 function failure(input: SeriesStepInput, settings: SourceSettings, result: StepResult): NotPossible | null {
@@ -138,7 +143,7 @@ function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: S
   const { channel, aimVolts } = input;
   const ohm = source.leadResistanceOhm + input.linkOhm + input.stringIn(model.nominal).ohm;
   const markVolts = Math.max(input.markVolts, channel.minAmps * ohm);
-  const leads = leadOhmIn(model, channel);
+  const leads = leadOhmIn(channel);
   const run = sampleRun({
     model,
     ...(leads === undefined ? {} : { leadOhmIn: leads }),

@@ -28,20 +28,25 @@ export function withTimeFactor(sampled: readonly number[][], factor: TimeFactor)
   if (!(factor.sd >= 0) || !Number.isFinite(factor.sd))
     throw new CalcInputError('timeFactor.sd', factor.sd, 'a number, 0 or above');
   const totals = sampled.map((seconds) => seconds.reduce((sum, one) => sum + one, 0));
-  const flowing = totals.filter((total) => total > 0).map(Math.log);
-  if (flowing.length === 0) return sampled.map((seconds) => [...seconds]);
-  const middle = quantile(flowing, 0.5);
-  const mean = flowing.reduce((sum, log) => sum + log, 0) / flowing.length;
-  const variance = flowing.reduce((sum, log) => sum + (log - mean) ** 2, 0) / flowing.length;
-  const seen = (factor.sd / factor.mean) ** 2;
-  const weight = factor.charges / (factor.charges + SAMPLES_WORTH);
-  const stretch = variance > 0 ? Math.sqrt((weight * seen + (1 - weight) * variance) / variance) : 1;
+  const { middle, stretch } = scatterOf(totals, factor);
   return sampled.map((seconds, at) => {
     const total = totals[at]!;
     if (!(total > 0)) return [...seconds];
     const times = factor.mean * Math.exp((stretch - 1) * (Math.log(total) - middle));
     return seconds.map((one) => one * times);
   });
+}
+
+/** Middle of the samples' seconds, by the logarithm, and how many times as wide closed charges have made them. */
+export function scatterOf(totals: readonly number[], factor: TimeFactor): { middle: number; stretch: number } {
+  const flowing = totals.filter((total) => total > 0).map(Math.log);
+  if (flowing.length === 0) return { middle: 0, stretch: 1 };
+  const mean = flowing.reduce((sum, log) => sum + log, 0) / flowing.length;
+  const variance = flowing.reduce((sum, log) => sum + (log - mean) ** 2, 0) / flowing.length;
+  const seen = (factor.sd / factor.mean) ** 2;
+  const weight = factor.charges / (factor.charges + SAMPLES_WORTH);
+  const stretch = variance > 0 ? Math.sqrt((weight * seen + (1 - weight) * variance) / variance) : 1;
+  return { middle: quantile(flowing, 0.5), stretch };
 }
 
 /** 'Learned from 14 charges: 6 % longer than reckoned.' */

@@ -228,7 +228,8 @@ function oddDto({ charge }: ChargeFile): OddDto | null {
   const odd = charge.reckoning?.reckoning.odd ?? null;
   if (odd === null || !isUnderWay(charge.stage)) return null;
   const { sinceS, ...seen } = odd;
-  return { ...seen, since: toInstant(instantOf(charge, sinceS)) };
+  // The instant of a reading, to the millisecond: rounded up as what is to come is, it would lie after that reading.
+  return { ...seen, since: toInstant((charge.startedAt ?? 0) + Math.round(sinceS * 1000)) };
 }
 
 function expectedOf({ charge }: ChargeFile): ChargeDto['expected'] {

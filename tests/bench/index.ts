@@ -1,21 +1,25 @@
 // `npm run bench`. Figures of this machine, to be read, not to pass or fail: that is what the tests are for.
 import os from 'node:os';
+import { benchAlarms } from './alarms';
+import { benchCalibration } from './calibration';
 import { benchFirstLoad } from './first-load';
-import { benchCalibration, benchLive } from './live';
+import { benchLive } from './live';
 import { benchPlan } from './plan';
 import { benchStep } from './step';
 
-const benches = {
-  step: benchStep,
-  plan: benchPlan,
-  live: benchLive,
-  calibration: benchCalibration,
-  'first-load': benchFirstLoad,
-};
-const wanted = process.argv.slice(2);
+/** Under a minute together. */
+const quick = { step: benchStep, plan: benchPlan, live: benchLive, 'first-load': benchFirstLoad };
+/** Minutes each, and so only by name. */
+const slow = { calibration: benchCalibration, alarms: benchAlarms };
+const benches: Record<string, () => AsyncIterable<string> | Promise<string[]>> = { ...quick, ...slow };
+
+const asked = process.argv.slice(2);
+const unknown = asked.filter((name) => !(name in benches));
+if (unknown.length > 0) {
+  console.error(`No bench is called ${unknown.join(', ')}. There are: ${Object.keys(benches).join(', ')}.`);
+  process.exit(1);
+}
 
 console.log(`Node ${process.versions.node}, ${os.cpus().length} cores, ${os.cpus()[0]?.model ?? 'unknown processor'}`);
-for (const [name, bench] of Object.entries(benches)) {
-  if (wanted.length > 0 && !wanted.includes(name)) continue;
-  for (const line of await bench()) console.log(line);
-}
+for (const name of asked.length > 0 ? asked : Object.keys(quick))
+  for await (const line of await benches[name]!()) console.log(line);

@@ -1,9 +1,12 @@
 import { chargeThroughTerminals, planCharge, reckonCharge, type PlanInput } from '@/calc/index';
+import { DEFAULT_SAMPLES } from '@/calc/plan/plan-model';
 import { fileURLToPath } from 'node:url';
 import { reckonInput } from '../calc/live-fixtures';
 import { lmoModule, lmoSpare, planInput, sixChannels } from '../calc/plan-fixtures';
 import { LMO_BLEND } from '../calc/reference/curves';
 import { lmoGroup, stepOf } from '../calc/reference/modules';
+import { fastest } from './fastest';
+import { ratioText, yardsticks } from './yardsticks';
 
 const plans: { name: string; input: PlanInput }[] = [
   { name: '2 groups', input: planInput({ channels: sixChannels }) },
@@ -18,7 +21,7 @@ const plans: { name: string; input: PlanInput }[] = [
 ];
 
 /**
- * Times a whole plan, all ways, finishes and six channels with bands of 64 samples, against the same plan's nominal run alone
+ * Times a whole plan, all ways, finishes and six channels with their bands, against the same plan's nominal run alone
  * (one sample), and against one single step of the core through a taper; then one reckoning of a running charge.
  *
  * @returns lines to print
@@ -39,9 +42,10 @@ function benchOne({ name, input }: (typeof plans)[number], stepMs: number): stri
   const whole = fastest(() => planCharge(input), 3, 10);
   const nominal = fastest(() => planCharge({ ...input, samples: 1 }), 3, 10);
   return (
-    `a plan, ${name}, six channels: ${whole.toFixed(1)} ms for ${options.length} ways with bands of 64 samples; ` +
+    `a plan, ${name}, six channels: ${whole.toFixed(1)} ms for ${options.length} ways with bands of ${DEFAULT_SAMPLES} samples; ` +
     `${(whole / nominal).toFixed(2)} times its nominal run alone (${nominal.toFixed(1)} ms), ` +
-    `${(whole / stepMs).toFixed(0)} times one on-the-mark step of the core (${(1000 * stepMs).toFixed(0)} µs)`
+    `${(whole / stepMs).toFixed(0)} times one on-the-mark step of the core (${(1000 * stepMs).toFixed(0)} µs); ` +
+    ratioText(whole, yardsticks())
   );
 }
 
@@ -57,18 +61,7 @@ function benchReckoning(): string {
   }));
   const live = reckonInput(input, option, { nowS: 2500, readings });
   const ms = fastest(() => reckonCharge(live), 10, 10);
-  return `a reckoning of a running charge with 20 readings: ${ms.toFixed(2)} ms`;
-}
-
-/** Milliseconds of one run: the least mean of several batches, which other work on the machine disturbs least. */
-function fastest(run: () => unknown, runs: number, batches: number): number {
-  let best = Infinity;
-  for (let batch = 0; batch < batches; batch++) {
-    const start = performance.now();
-    for (let at = 0; at < runs; at++) run();
-    best = Math.min(best, (performance.now() - start) / runs);
-  }
-  return best;
+  return `a reckoning of a running charge with 20 readings: ${ms.toFixed(2)} ms; ${ratioText(ms, yardsticks())}`;
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) for (const line of await benchPlan()) console.log(line);

@@ -3,6 +3,7 @@ import { fileURLToPath } from 'node:url';
 import { LMO_BLEND, NMC } from '../calc/reference/curves';
 import { lmoGroup, stepOf } from '../calc/reference/modules';
 import { integrateAgain } from '../calc/reference/second-integrator';
+import { fastest } from './fastest';
 
 /** On the mark, through a taper: the dearest kind of step. */
 const steps: { name: string; input: StepInput }[] = [
@@ -53,17 +54,6 @@ function benchOne({ name, input }: (typeof steps)[number]): string {
     `one step, ${name}: ${(1000 * ours).toFixed(0)} µs, off by ${missed.toExponential(1)} of charge; ` +
     `solveODE at tolerance ${(tolerance ?? 1e-8).toExponential(0)}: ${theirs.toFixed(1)} ms; ${ratio.toFixed(0)} times faster${verdict}`
   );
-}
-
-/** Milliseconds of one run: the least mean of several batches, which other work on the machine disturbs least. */
-function fastest(run: () => unknown, runs: number, batches: number): number {
-  let best = Infinity;
-  for (let batch = 0; batch < batches; batch++) {
-    const start = performance.now();
-    for (let i = 0; i < runs; i++) run();
-    best = Math.min(best, (performance.now() - start) / runs);
-  }
-  return best;
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) for (const line of await benchStep()) console.log(line);

@@ -30,22 +30,19 @@ describe('the 80 % band against charges of the integrator with a random source o
     expect(asStated[3]!.widthS).toBeLessThan(0.8 * asStated[1]!.widthS);
   });
 
-  // 70 in 100 are asked for. With the curve off by 10 mV 64 to 68 are held, before the charge already: the plan's own spread of
-  // the curve is 4 mV. That is a shortfall, and the floor here only keeps it from growing.
-  it.each([
-    ['two time constants', 0.7],
-    ['leads unknown', 0.7],
-    ['curve off by 10 mV', 0.63],
-  ] as const)(
-    'in a world of %s, which it was not told of, holds a share of %d of the charges, no wider than 1.5 times',
-    (twist, least) => {
+  it.each(['two time constants', 'leads unknown', 'curve off by 10 mV'])(
+    'in a world of %s, which it was not told of, holds 70 % of the charges, no wider than 1.5 times',
+    (twist) => {
       const held = pooled([5, 6].map((seed) => calibrate(seed, 100, twist)));
       const sum = (of: (one: (typeof held)[number]) => number): number =>
         held.reduce((total, one) => total + of(one), 0);
-      const text = heldText(twist, held).join('\n');
-      // 200 charges looked at four times: 3.3 % is one standard deviation of each.
-      expect(sum((one) => one.inside) / sum((one) => one.count), text).toBeGreaterThan(least - 0.033);
-      held.forEach((one, at) => expect(one.widthS, text).toBeLessThan(1.5 * asStated[at]!.widthS));
+      const text = heldText(twist, held, asStated).join('\n');
+      // Of 200 charges 3.3 % is one standard deviation; the same ones looked at four times say little more than once.
+      expect(sum((one) => one.inside) / sum((one) => one.count), text).toBeGreaterThan(0.7 - 0.033);
+      held.forEach((one, at) => {
+        expect(one.inside / one.count, text).toBeGreaterThan(0.7 - 2 * 0.033);
+        expect(one.widthS, text).toBeLessThan(1.5 * asStated[at]!.widthS);
+      });
     },
   );
 }, 240_000);

@@ -42,7 +42,7 @@ function detected(plan: PlanInput, everyS: number, seed: number, fault: (one: Li
 const SEEDS = [11, 12, 13, 14, 15];
 
 describe('an odd reading', () => {
-  const looseClip = (plan: PlanInput, everyS: number): void => {
+  it.each(cases)('of a clip that is loose by 50 mohm is seen within two readings: %s', (_, plan, everyS) => {
     for (const seed of SEEDS) {
       const { after } = detected(plan, everyS, seed, (one) => ({
         ...one,
@@ -55,17 +55,7 @@ describe('an odd reading', () => {
       const amps = plan.channels[0]!.maxAmps;
       expect(Math.abs(after.odd!.seen - after.odd!.expected - 0.05 * amps)).toBeLessThan(0.12 * 0.05 * amps + 0.08);
     }
-  };
-  // 50 mohm at 4 A are 17 mV a group of twelve: by hand at 15 min that is within what a curve may be off between two looks.
-  const drowned = (name: string): boolean => name.startsWith('twelve groups') && name.endsWith('a hand at 15 min');
-  it.each(cases.filter(([name]) => !drowned(name)))(
-    'of a clip that is loose by 50 mohm is seen within two readings: %s',
-    (_, plan, everyS) => looseClip(plan, everyS),
-  );
-  it.fails.each(cases.filter(([name]) => drowned(name)))(
-    'of a clip that is loose by 50 mohm is seen within two readings: %s',
-    (_, plan, everyS) => looseClip(plan, everyS),
-  );
+  });
 
   it.each(cases)('of a channel that has died, 0 A, is seen within two readings: %s', (_, plan, everyS) => {
     for (const seed of SEEDS) {
@@ -155,7 +145,7 @@ describe('an odd reading', () => {
 });
 
 describe('clean charges', () => {
-  // 100 h each way are watched in the bench (tests/bench/live.ts); here a share of them, every reading of which is seen.
+  // 100 h each way are watched in the bench (npm run bench -- alarms); here a share of them, every reading of which is seen.
   it('raise no alarm in 40 h read by hand every 15 min', () => {
     const { hours, alarms } = watchClean(900, 1, 16);
     expect(hours).toBeGreaterThan(40);

@@ -48,6 +48,13 @@ describe('a target in state of charge on the plateau', () => {
     option.endGroupVolts.forEach((volts) => expect(volts).toBeCloseTo(voltsAtSoc(CHEMISTRIES.lfp.curve, 0.6), 4));
   });
 
+  it('with a group below its pre-charge volts goes to full at C/10, 10 A of 20', () => {
+    const module = { ...lfp, prechargeBelowVolts: 3 };
+    const from = (volts: number) => fromFull({ module, spare: { ...spare, groupVolts: [3.3, 3.3, volts, 3.3] } });
+    expect(from(2.9).steps[0]!.setAmps).toBeCloseTo(10, 9);
+    expect(from(3.1).steps[0]!.setAmps).toBe(20);
+  });
+
   it('goes to empty first, soonest for a low one, and counts some 31 Ah in', () => {
     const low = { ...spare, groupVolts: [3.1, 3.1, 3.1, 3.1] };
     const [option] = planCharge(input({ target: bySoc(0.32), spare: low })).options;

@@ -8,6 +8,7 @@ import { Link } from '../primitives/link';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { channelsOf, firstName, isFlowing, isToCome, isUnderWay, waitsForSwap } from './card-model';
+import { isDueEarly } from './rest-words';
 
 /** Look-in due or to come, and the tap that does it. */
 export function LookInLine({
@@ -90,7 +91,7 @@ export function CurrentLine({
   return (
     <View style={styles.line}>
       <Txt style={styles.words}>
-        {`The current is off since ${moment(at, zone, now, marks)}${said ? '' : ' as reckoned'}. The rest takes at least ${duration(charge.minRestS, 'minute')}.`}
+        {`The current is off since ${moment(at, zone, now, marks)}${said ? '' : ' as reckoned'}.${isDueEarly(charge, now) ? '' : ` The rest takes at least ${duration(charge.minRestS, 'minute')}.`}`}
       </Txt>
       {charge.stage === 'resting' ? (
         <Link

@@ -3,7 +3,7 @@ import type { ChargeDto } from '@/shared/contract/charge';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { Txt } from '../primitives/txt';
-import { enoughWords, settlesWords } from './rest-words';
+import { enoughWords, isDueEarly, settlesWords } from './rest-words';
 
 /** Where the groups will settle by the readings of the rest, and when that is enough; else what would tell it. */
 export function RestLine({ charge, now }: { charge: ChargeDto; now: number }) {
@@ -17,12 +17,15 @@ export function RestLine({ charge, now }: { charge: ChargeDto; now: number }) {
         Three readings of the groups during the rest tell where they settle, and often let the check come sooner.
       </Txt>
     ) : null;
+  const due = isDueEarly(charge, now);
   return (
     <View role="group" aria-label="Where it settles">
       {settlesWords(rest, marks).map((line) => (
         <Txt key={line}>{line}</Txt>
       ))}
-      <Txt bold={rest.restedEnough}>{enoughWords(rest, (instant) => moment(instant, zone, now, marks))}</Txt>
+      <Txt bold={rest.restedEnough || due}>
+        {enoughWords(rest, (instant) => moment(instant, zone, now, marks), due)}
+      </Txt>
       <Txt kind="small" tone="ink2">
         {`From ${rest.readings} readings of the groups since the current is off; the band holds 8 of 10.`}
       </Txt>

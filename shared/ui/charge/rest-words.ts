@@ -22,11 +22,27 @@ export function settlesWords({ settledVolts }: Pick<RestDto, 'settledVolts'>, ma
   );
 }
 
-/** 'Rested enough at about 14:20.' */
+/** When the minimum rest is over, epoch ms; null while the current has not ended. */
+export const leastRestEnd = ({ currentEndAt, minRestS }: Pick<ChargeDto, 'currentEndAt' | 'minRestS'>) =>
+  currentEndAt === null ? null : Date.parse(currentEndAt) + minRestS * 1000;
+
+/** The check is due before the minimum rest is over: the readings have said so. */
+export function isDueEarly(charge: Pick<ChargeDto, 'stage' | 'currentEndAt' | 'minRestS'>, now: number): boolean {
+  const least = leastRestEnd(charge);
+  return charge.stage === 'check-due' && least !== null && now < least;
+}
+
+/**
+ * 'Rested enough at about 14:20.'
+ * @param due the check is due already, before the minimum rest is over
+ */
 export function enoughWords(
   { restedEnough, enoughAt }: Pick<RestDto, 'restedEnough' | 'enoughAt'>,
   at: (instant: number) => string,
+  due = false,
 ): string {
+  // Two readings that agree end the rest too, where the forecast from few of them is not sure yet.
+  if (due && !restedEnough) return 'Readings ten minutes apart agree: the check may come now.';
   if (enoughAt === null) return 'It still drifts: the readings do not see it rested enough within a day.';
   return restedEnough
     ? `Rested enough since ${at(Date.parse(enoughAt))}: the check may come now.`
@@ -35,13 +51,13 @@ export function enoughWords(
 
 /** Where a check now would come before the minimum rest is over; null: it would not. */
 export function earlyCheckWords(
-  charge: Pick<ChargeDto, 'checkDueAt' | 'currentEndAt' | 'minRestS' | 'rest'>,
+  charge: Pick<ChargeDto, 'stage' | 'checkDueAt' | 'currentEndAt' | 'minRestS'>,
   { now, zone, marks }: { now: number; zone: string; marks: LocaleMarks },
 ): string | null {
   const due = charge.checkDueAt === null ? null : Date.parse(charge.checkDueAt);
   if (due !== null && now < due)
     return `The rest is over at ${moment(due, zone, now, marks)}, in ${duration((due - now) / 1000, 'minute')}. A check before then counts, and the log says that it was early.`;
-  const least = charge.currentEndAt === null ? null : Date.parse(charge.currentEndAt) + charge.minRestS * 1000;
-  if (!charge.rest?.restedEnough || least === null || now >= least) return null;
+  const least = leastRestEnd(charge);
+  if (least === null || !isDueEarly(charge, now)) return null;
   return `The readings say that it has settled. The minimum rest is over in ${duration((least - now) / 1000, 'minute')}: a check before then counts and is marked early.`;
 }

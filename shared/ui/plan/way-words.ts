@@ -30,6 +30,8 @@ export const doubtWords: Readonly<Record<Doubt, { name: string; advice: string }
   current: { name: 'the charger’s current', advice: 'Checking the charger’s amps' },
   'spare-reading': { name: 'the spare’s reading', advice: 'Reading the spare again, with the pack’s meter,' },
   'target-reading': { name: 'the pack’s reading', advice: 'Reading the pack again' },
+  charger: { name: 'the charger’s voltmeter', advice: 'Checking the charger’s voltmeter' },
+  leads: { name: 'the leads', advice: 'Measuring the leads' },
   curve: { name: 'the voltage curve', advice: 'A curve measured for this type' },
   temperature: { name: 'the temperature', advice: 'Measuring the temperature' },
 };

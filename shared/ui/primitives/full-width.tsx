@@ -1,4 +1,4 @@
-import { useState, type ReactNode } from 'react';
+import { useLayoutEffect, useRef, useState, type ReactNode } from 'react';
 import { View } from 'react-native';
 
 /**
@@ -7,8 +7,15 @@ import { View } from 'react-native';
  */
 export function FullWidth({ height, children }: { height: number; children: (width: number) => ReactNode }) {
   const [width, setWidth] = useState(0);
+  const place = useRef<View>(null);
+  // The layout is told a frame or more late, on a busy device much more: a browser knows the width at once.
+  useLayoutEffect(() => {
+    const known = (place.current as { offsetWidth?: number } | null)?.offsetWidth ?? 0;
+    if (known > 0) setWidth(known);
+  }, []);
   return (
     <View
+      ref={place}
       style={{ minHeight: height, alignSelf: 'stretch' }}
       onLayout={({ nativeEvent }) => setWidth(Math.floor(nativeEvent.layout.width))}
     >

@@ -55,6 +55,16 @@ export function readCurveText(text: string, chemistry: Chemistry): CurveRead | n
   };
 }
 
+/** Characters that no table holds; a spreadsheet's own file and a picture are full of them. */
+const isBinary = (text: string): boolean => [...text].some((sign) => sign < ' ' && !'\t\n\v\f\r'.includes(sign));
+
+/** Why a file is no table at all, and what to do; null: it is read as one. */
+export function fileProblem({ name, text }: { name: string; text: string }): string | null {
+  if (text.trim() === '') return `${name} is empty. Choose another file, or paste the rows.`;
+  if (isBinary(text)) return `${name} is no plain text. Save the table as CSV, then choose that file.`;
+  return null;
+}
+
 /** '13 points understood: semicolon, charge in per cent, one heading line skipped.' */
 export function understoodWords({ own, separator, heading }: CurveRead): string {
   if (!own.ok) return '';

@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import { View } from 'react-native';
-import { EN_DASH } from '../format/marks';
+import { EN_DASH, NBSP } from '../format/marks';
 import { BottomSheet } from '../primitives/bottom-sheet';
 import { Button } from '../primitives/button';
 import { CallOut } from '../primitives/call-out';
@@ -9,7 +9,7 @@ import { Table } from '../primitives/table';
 import { Span, Txt } from '../primitives/txt';
 import type { CurveInput } from './curve-layout';
 import { CurvePicture } from './curve-picture';
-import { readCurveText, understoodWords, type CurveRead } from './curve-text';
+import { fileProblem, readCurveText, understoodWords, type CurveRead } from './curve-text';
 import { canPickFile, pickTextFile } from './pick-text-file';
 
 /** A curve as it was pasted or picked; kept while the sheet is closed. */
@@ -43,16 +43,19 @@ export function OwnCurveSheet({
   onSave: (text: string) => void;
   onClose: () => void;
 }) {
-  const [unread, setUnread] = useState(false);
+  const [unread, setUnread] = useState<string | null>(null);
   const read = readCurveText(draft.text, input.chemistry);
   const good = read?.own.ok === true;
   const pick = () =>
     pickTextFile('.csv,.txt,text/csv,text/plain').then(
       (picked) => {
-        setUnread(false);
-        if (picked) onDraft({ text: picked.text, fileName: picked.name });
+        if (!picked) return;
+        const wrong = fileProblem(picked);
+        setUnread(wrong);
+        // What stood there stays: a file that is no table takes nothing away.
+        if (wrong === null) onDraft({ text: picked.text, fileName: picked.name });
       },
-      () => setUnread(true),
+      () => setUnread('The file could not be read. Choose it again, or paste its rows.'),
     );
   return (
     <BottomSheet
@@ -88,15 +91,14 @@ export function OwnCurveSheet({
     >
       <View style={{ rowGap: 14 }}>
         <Txt>
-          State of charge and rest volts of one cell side by side, a row each: 8 points or more, from 10 to 90 % of
-          charge.
+          {`State of charge and rest volts of one cell side by side, a row each: 8 points or more, from 10 to 90${NBSP}% of charge.`}
         </Txt>
         {canPickFile ? (
           <Button look="line" icon="upload" title="Choose a CSV file" onPress={() => void pick()} />
         ) : null}
         {unread ? (
           <Txt kind="label" tone="alarm" role="alert">
-            The file could not be read. Choose it again, or paste its rows.
+            {unread}
           </Txt>
         ) : null}
         <Field
@@ -105,7 +107,10 @@ export function OwnCurveSheet({
           multiline
           lines={6}
           value={draft.text}
-          onChangeText={(text) => onDraft({ text, fileName: '' })}
+          onChangeText={(text) => {
+            setUnread(null);
+            onDraft({ text, fileName: '' });
+          }}
         />
         {read ? <Understood read={read} input={input} /> : null}
       </View>

@@ -31,8 +31,8 @@ export function optionOf(plan: PlanInput): PlanOption {
 }
 
 /**
- * True charges without a fault, looked at after every `lookEvery` readings (no more than the reckoning keeps of the last ones,
- * so that none is missed): their hours, and how often an alarm began.
+ * True charges without a fault, their curves bent as far as the model allows itself, looked at after every `lookEvery` readings
+ * (no more than the reckoning keeps of the last ones, so that none is missed): their hours, and how often an alarm began.
  */
 export function watchClean(everyS: number, lookEvery: number, charges: number): { hours: number; alarms: number } {
   let hours = 0;
@@ -41,7 +41,7 @@ export function watchClean(everyS: number, lookEvery: number, charges: number): 
     const [, plan] = watchedPlans[at % watchedPlans.length]!;
     const option = optionOf(plan);
     const chance = new Chance(1000 + at);
-    const world = drawWorld(plan, option, spreadsOf(plan), chance)!;
+    const world = drawWorld(plan, option, spreadsOf(plan), chance, { bent: true })!;
     const times = Array.from({ length: Math.floor(world.currentS / everyS) }, (_, k) => (k + 1) * everyS);
     const readings = world.readAt(times, chance).map((one) => ({ ...one, celsius: 25 + 0.7 * chance.normal() }));
     hours += world.currentS / 3600;

@@ -71,11 +71,28 @@ export interface MeasuredCharge {
   firstVolts: number;
   /** From the start of current to that reading, s. */
   afterS: number;
+  /** Until the current begins to fall, by its own fall (`fallBeginS`). */
   constantS: number;
   totalS: number;
   taperS: number;
+  /** The same two with the taper counted from the first row of less current, which comes up to a row late. */
+  byRow: { constantS: number; taperS: number };
   ampHours: number;
   rows: LogRow[];
+}
+
+/**
+ * When the current began to fall. Rows are up to a minute apart, so that the first one below the constant current comes up to a
+ * minute late: the exponential through it and the next row, both under constant voltage, is taken back to where it meets the
+ * constant current, and never before the last row of full current.
+ *
+ * @param at the first row of less current
+ */
+function fallBeginS(rows: readonly LogRow[], at: number, amps: number): number {
+  const [before, first, second] = [rows[at - 1], rows[at]!, rows[at + 1]];
+  if (before === undefined || second === undefined || !(second.amps < first.amps && first.amps < amps)) return first.s;
+  const perSecond = Math.log(first.amps / second.amps) / (second.s - first.s);
+  return Math.max(before.s, first.s - Math.log(amps / first.amps) / perSecond);
 }
 
 export function measuredCharge(log: LogCase, lowestVolts: number): MeasuredCharge {
@@ -87,15 +104,17 @@ export function measuredCharge(log: LogCase, lowestVolts: number): MeasuredCharg
   while (last > 0 && rows[last - 1]!.amps < log.amps * 0.99) last -= 1;
   const end = log.holdS === null ? rows.findIndex((row, at) => at > last && row.amps <= log.cutoffAmps) : -1;
   const stop = end < 0 ? rows.length - 1 : end;
+  const constantS = fallBeginS(rows, last, log.amps);
   const ampHours = rows
     .slice(1, stop + 1)
     .reduce((sum, row, at) => sum + ((row.amps + rows[at]!.amps) / 2) * ((row.s - rows[at]!.s) / 3600), 0);
   return {
     firstVolts: charge[first]!.volts,
     afterS: charge[first]!.s,
-    constantS: rows[last]!.s,
+    constantS,
     totalS: rows[stop]!.s,
-    taperS: rows[stop]!.s - rows[last]!.s,
+    taperS: rows[stop]!.s - constantS,
+    byRow: { constantS: rows[last]!.s, taperS: rows[stop]!.s - rows[last]!.s },
     ampHours,
     rows: rows.slice(0, stop + 1),
   };

@@ -19,5 +19,9 @@ export function spreadsOf(plan: PlanInput): WorldSpreads {
     terminalVolts: LIVE_SPREADS.terminalVolts,
     ammeterRelative: LIVE_SPREADS.ammeterRelative,
     ammeterAmps: LIVE_SPREADS.ammeterAmps,
+    modelRelative: LIVE_SPREADS.modelRelative,
+    modelVolts: LIVE_SPREADS.modelVolts,
+    modelSoc: LIVE_SPREADS.modelSoc,
+    modelCorrelationSoc: LIVE_SPREADS.modelCorrelationSoc,
   };
 }

@@ -10,7 +10,7 @@ import {
 } from '@/calc/index';
 import type { LiveReading } from '@/calc/live-types';
 import type { PlanInput, PlanOption } from '@/calc/plan-types';
-import type { CellGroup, StepInput, StepResult } from '@/calc/types';
+import type { CellGroup, OcvTable, StepInput, StepResult } from '@/calc/types';
 
 /** Random numbers apart from the code under test: a linear congruential generator of 64 bits, its high word, and Box–Muller. */
 export class Chance {
@@ -56,12 +56,22 @@ export interface WorldSpreads {
   terminalVolts: number;
   ammeterRelative: number;
   ammeterAmps: number;
+  /** Of the one-RC model under current: of the long resistance, as a share, */
+  modelRelative: number;
+  /** of the curve, V a group, */
+  modelVolts: number;
+  /** and of the curve along its own axis, as a share of the capacity. */
+  modelSoc: number;
+  /** Width of the humps of the two, as a share of the capacity. */
+  modelCorrelationSoc: number;
 }
 
 /** What the world is beside the spreads: where it is not the one that was planned for. */
 export interface Twist {
-  /** The whole curve, V a group. */
+  /** The whole curve is off by this, V a group, in place of what is drawn. */
   curveVolts?: number;
+  /** The resistance under current and the curve's shape are off as the model's own spreads have them. */
+  bent?: boolean;
   /** True lead resistance, ohm. */
   leadOhm?: number;
   /** A second, slow RC pair takes this share of the long resistance, with this time constant, s. */
@@ -96,7 +106,8 @@ export function drawWorld(
   const count = plan.spare.groupVolts.length;
   const normal = (): number => chance.normal();
 
-  const curveOff = spreads.curveVolts * normal() + (twist.curveVolts ?? 0);
+  const drawnOff = spreads.curveVolts * normal();
+  const curveOff = twist.curveVolts ?? drawnOff;
   const meter = spreads.meterVolts * normal();
   const other = spreads.meterVolts * normal();
   const sameMeter = plan.spare.meterId !== null && plan.spare.meterId === plan.target.meterId;
@@ -115,15 +126,18 @@ export function drawWorld(
       ? 0
       : (twist.leadOhm ?? channel.leadResistanceOhm * Math.exp(spreads.leadRelative * normal()));
   const ammeter = 1 + spreads.ammeterRelative * normal();
+  const modelFactor = twist.bent ? Math.exp(spreads.modelRelative * normal()) : 1;
 
   // True rest volts are the table's less the offset; what a meter read is the true volts less its own offset.
   const startSoc = plan.spare.groupVolts.map((volts) =>
     socAtVolts(table, volts + spreads.readingVolts * normal() + meter + curveOff),
   );
   const targetSoc = socAtVolts(table, plan.target.volts + targetOff + targetMeter + curveOff);
-  const trueCurve = shiftCurve(table, -curveOff);
+  const trueCurve = shiftCurve(twist.bent ? bent(table, spreads, chance) : table, -curveOff);
+  // Whoever reads the module at rest finds it on the table; bent is what the curve is under current.
+  const endVolts = voltsAtSoc(trueCurve, targetSoc);
   const slowOhm = (twist.slow?.share ?? 0) * longOhm;
-  const { ohmicResistanceOhm, polarisationResistanceOhm } = splitLongResistance(longOhm);
+  const { ohmicResistanceOhm, polarisationResistanceOhm } = splitLongResistance(longOhm * modelFactor);
   const groups: CellGroup[] = startSoc.map((soc) => ({
     capacityAh,
     ohmicResistanceOhm,
@@ -147,7 +161,7 @@ export function drawWorld(
       loadOhm: null,
     },
     stop: {
-      relaxedVolts: onTheMark ? null : count * voltsAtSoc(trueCurve, targetSoc),
+      relaxedVolts: onTheMark ? null : count * endVolts,
       toleranceVolts: 0,
       cutoffAmps: onTheMark ? Math.abs(step.endAmps) : null,
       groupVolts: null,
@@ -176,6 +190,28 @@ export function drawWorld(
         };
       }),
   };
+}
+
+/** A curve whose shape between start and end is not the table's: humps as the spreads have them, up and along its axis. */
+function bent(table: OcvTable, spreads: WorldSpreads, chance: Chance): OcvTable {
+  // The code forgets an error by e^(−Δz/L); a smooth one of this width forgets itself over the same charge (equal integrals).
+  const width = spreads.modelCorrelationSoc / Math.sqrt(Math.PI / 2);
+  const up = smoothNoise(width, chance);
+  const along = smoothNoise(width, chance);
+  const soc = Array.from({ length: 51 }, (_, at) => at / 50);
+  const volts = soc.map((z) => voltsAtSoc(table, z + spreads.modelSoc * along(z)) + spreads.modelVolts * up(z));
+  const rises = volts.every((one, at) => at === 0 || one > volts[at - 1]!);
+  return rises ? { soc, volts } : bent(table, spreads, chance);
+}
+
+/** A standard normal number that changes smoothly over z: its correlation is exp(−Δz²/2width²), by random waves. */
+function smoothNoise(width: number, chance: Chance): (z: number) => number {
+  const waves = Array.from({ length: 24 }, () => ({
+    per: chance.normal() / width,
+    phase: 2 * Math.PI * chance.uniform(),
+  }));
+  const size = Math.sqrt(2 / waves.length);
+  return (z) => size * waves.reduce((sum, { per, phase }) => sum + Math.cos(per * z + phase), 0);
 }
 
 const snapped = (volts: number, step: number): number => (step > 0 ? Math.round(volts / step) * step : volts);

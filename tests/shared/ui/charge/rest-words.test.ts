@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { pointMarks } from '@/shared/ui/format/marks';
-import { earlyCheckWords, enoughWords, settlesWords } from '@/shared/ui/charge/rest-words';
+import { earlyCheckWords, enoughWords, isDueEarly, settlesWords } from '@/shared/ui/charge/rest-words';
 import { at, iso, zone } from './charges';
 
 const plain = (text: string | null) => text?.replaceAll('\u00a0', ' ') ?? null;
@@ -27,14 +27,29 @@ describe('the forecast of a rest in words', () => {
     expect(enoughWords(rest, clockOf)).toBe('Rested enough since 14:20: the check may come now.');
     expect(enoughWords({ restedEnough: false, enoughAt: null }, clockOf)).toMatch(/still drifts/);
   });
+
+  it('names no later time once readings have made the check due before the minimum rest of an hour is over', () => {
+    const charge = { currentEndAt: iso('13:00'), minRestS: 3600 };
+    expect(isDueEarly({ ...charge, stage: 'check-due' }, at('13:42'))).toBe(true);
+    expect(isDueEarly({ ...charge, stage: 'check-due' }, at('14:01'))).toBe(false);
+    expect(isDueEarly({ ...charge, stage: 'resting' }, at('13:42'))).toBe(false);
+    const unsure = { ...rest, restedEnough: false };
+    expect(enoughWords(unsure, clockOf, true)).toBe('Readings ten minutes apart agree: the check may come now.');
+    expect(enoughWords(rest, clockOf, true)).toBe('Rested enough since 14:20: the check may come now.');
+  });
 });
 
 describe('a check that would come early', () => {
   const marks = pointMarks;
-  const said = (rested: boolean, now: string, checkDueAt: string) =>
+  const said = (due: boolean, now: string, checkDueAt: string) =>
     plain(
       earlyCheckWords(
-        { checkDueAt: iso(checkDueAt), currentEndAt: iso('13:00'), minRestS: 3600, rest: rested ? rest : null },
+        {
+          stage: due ? 'check-due' : 'resting',
+          checkDueAt: iso(checkDueAt),
+          currentEndAt: iso('13:00'),
+          minRestS: 3600,
+        },
         { now: at(now), zone, marks },
       ),
     );

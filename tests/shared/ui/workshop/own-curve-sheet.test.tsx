@@ -2,7 +2,10 @@ import { fireEvent, render, screen } from '@testing-library/react';
 import { useState } from 'react';
 import { describe, expect, it, vi } from 'vitest';
 import { NMC_MOHTAT_2020 } from '@/calc/parameters/nmc-mohtat-2020';
+import { pickTextFile } from '@/shared/ui/workshop/pick-text-file';
 import { OwnCurveSheet } from '@/shared/ui/workshop/own-curve-sheet';
+
+vi.mock('@/shared/ui/workshop/pick-text-file', () => ({ canPickFile: true, pickTextFile: vi.fn() }));
 
 const input = {
   chemistry: 'nmc',
@@ -59,5 +62,26 @@ describe('a workshop’s own curve', () => {
     expect(screen.getByText('Rest voltage against charge')).toBeTruthy();
     fireEvent.click(save());
     expect(onSave).toHaveBeenCalledWith(rows.join('\n'));
+  });
+
+  it.each([
+    ['rows.csv', ' \r\n', 'rows.csv is empty. Choose another file, or paste the rows.'],
+    // The first bytes of a picture, read as text.
+    [
+      'rows.png',
+      '\ufffdPNG\r\n\u001a\n\0\0\0',
+      'rows.png is no plain text. Save the table as CSV, then choose that file.',
+    ],
+  ])('says why %s is no table, and keeps the rows that stood there', async (name, text, sentence) => {
+    render(<Sheet onSave={() => {}} />);
+    paste(rows.join('\n'));
+    vi.mocked(pickTextFile).mockResolvedValueOnce({ name, text });
+    fireEvent.click(screen.getByRole('button', { name: 'Choose a CSV file' }));
+    expect((await screen.findByRole('alert')).textContent).toBe(sentence);
+    expect((screen.getByLabelText('Or paste the rows') as HTMLTextAreaElement).value).toBe(rows.join('\n'));
+    vi.mocked(pickTextFile).mockResolvedValueOnce({ name: 'good.csv', text: rows.join('\r\n') });
+    fireEvent.click(screen.getByRole('button', { name: 'Choose a CSV file' }));
+    await screen.findByText('good.csv');
+    expect(screen.queryByRole('alert')).toBeNull();
   });
 });
