@@ -21,6 +21,7 @@ export const liveRoots: readonly Root[] = [
   roots.charge,
   roots.repairs,
   roots.repair,
+  roots.packTypes,
   roots.alerts,
   roots.spares,
   roots.spare,
@@ -68,7 +69,7 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
       old(roots.spare);
     },
     'equipment:changed': () => {
-      for (const root of [roots.moduleTypes, roots.chargers, roots.resistors, roots.meters]) old(root);
+      for (const root of [roots.moduleTypes, roots.packTypes, roots.chargers, roots.resistors, roots.meters]) old(root);
       old(roots.board);
       old(roots.spares);
     },
