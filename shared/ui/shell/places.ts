@@ -109,6 +109,7 @@ const titles: Readonly<Record<string, string>> = {
   'workshop/people/[id]': 'Person',
   'workshop/chargers/[id]': 'Charger',
   'workshop/module-types/[id]': 'Module type',
+  'workshop/pack-types/[id]': 'Pack type',
   'workshop/meters/[id]': 'Meter',
   'workshop/resistors/[id]': 'Levelling resistor',
   'charges/[id]/index': 'Charge',
