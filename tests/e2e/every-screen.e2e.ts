@@ -22,6 +22,9 @@ const screens = [
   '/charges/R-2418',
   '/charges/R-2418/checks',
   '/charges/no-such-charge',
+  '/repairs',
+  '/repairs/new',
+  '/repairs/no-such-repair',
   '/spares',
   '/spares/new',
   '/spares/demo-spare-S-0422',
@@ -31,7 +34,7 @@ const screens = [
   '/alerts',
   '/waits',
   '/workshop',
-  ...['people', 'chargers', 'module-types', 'meters', 'resistors', 'limits', 'hours', 'walls'].map(
+  ...['people', 'chargers', 'module-types', 'pack-types', 'meters', 'resistors', 'limits', 'hours', 'walls'].map(
     (section) => `/workshop?section=${section}`,
   ),
   '/workshop/people/demo-bram',
@@ -39,6 +42,7 @@ const screens = [
   '/workshop/chargers/demo-charger-C2',
   '/workshop/module-types/new',
   '/workshop/module-types/demo-type-six',
+  '/workshop/pack-types/new',
   '/workshop/meters/new',
   '/workshop/meters/demo-meter-hand-1',
   '/workshop/resistors/new',

@@ -81,7 +81,7 @@ export default function Repairs() {
           sub={wide || !counts ? undefined : `${counts.open} open, ${counts.waiting} waiting for a module`}
           middle={
             <>
-              <View style={{ width: 300 }}>{search}</View>
+              <View style={{ width: 270 }}>{search}</View>
               {places}
             </>
           }

@@ -89,7 +89,8 @@ function Form({
   const start = useStartRepair();
   const change = useChangeRepair();
   const [initial] = useState(() => (repair ? repairTexts(repair, zone, today) : emptyRepair(today, me)));
-  const schema = useMemo(() => (repair ? changeRepairForm(zone) : newRepairForm(zone)), [repair === null, zone]);
+  const fresh = repair === null;
+  const schema = useMemo(() => (fresh ? newRepairForm(zone) : changeRepairForm(zone)), [fresh, zone]);
   const f = useContractForm({
     schema,
     initial,
@@ -141,7 +142,7 @@ function Form({
       ) : null}
       <RepairFields
         form={f.form}
-        fresh={repair === null}
+        fresh={fresh}
         fixedCount={repair?.readings.some(({ setAside }) => setAside === null) ?? false}
         packTypes={packTypes}
         moduleTypes={moduleTypes}
