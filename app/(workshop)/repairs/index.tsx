@@ -3,6 +3,7 @@ import { useState } from 'react';
 import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { serverTimeOf, useNow } from '@/shared/client/clock';
+import { useLink } from '@/shared/client/link';
 import { useRepairs } from '@/shared/client/repairs';
 import { useCan } from '@/shared/client/session';
 import { useSettled } from '@/shared/client/settled';
@@ -38,6 +39,7 @@ export default function Repairs() {
   const counts = pages[0]?.counts;
   const found = pages.flatMap(({ repairs }) => repairs);
   const cards = inView(view, found);
+  const old = useLink().state === 'down';
   const at = { now, asOf: serverTimeOf(query.dataUpdatedAt) };
   const open = (id: string) => router.push(`/repairs/${id}` as Href);
   const start = () => router.push('/repairs/new' as Href);
@@ -117,9 +119,9 @@ export default function Repairs() {
             ) : cards.length === 0 && !query.hasNextPage ? (
               <NothingFound view={view} looked={looked} onAll={() => [setTyped(''), setView('open')]} />
             ) : wide ? (
-              <RepairTable cards={cards} at={at} onOpen={open} />
+              <RepairTable cards={cards} at={at} old={old} onOpen={open} />
             ) : (
-              <RepairRows cards={cards} at={at} onOpen={open} />
+              <RepairRows cards={cards} at={at} old={old} onOpen={open} />
             )}
             {query.hasNextPage ? (
               <Button

@@ -136,14 +136,14 @@ export function RepairPage({
           side={
             wide ? (
               <Surface tone="sheet" style={{ padding: 18, borderRadius: 10, rowGap: 16 }}>
-                {repair.charge ? <ChargePart card={repair.charge} at={at} onOpen={onGo} /> : null}
+                {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
                 <HandedOver repair={repair} />
                 {next}
               </Surface>
             ) : (
               <View style={{ rowGap: 24 }}>
                 <HandedOver repair={repair} />
-                {repair.charge ? <ChargePart card={repair.charge} at={at} onOpen={onGo} /> : null}
+                {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
                 {readings}
                 {tail}
                 <EventsPart events={repair.events} now={now} />

@@ -15,10 +15,13 @@ import { StageTag } from '../stage/stage-tag';
 export function ChargePart({
   card,
   at,
+  old = false,
   onOpen,
 }: {
   card: ChargeCardDto;
   at: CardClock;
+  /** The link is down: figures turn grey. */
+  old?: boolean;
   onOpen: (path: string) => void;
 }) {
   const { zone, marks } = useFormats();
@@ -37,10 +40,10 @@ export function ChargePart({
         </Txt>
       </View>
       <View style={{ flexDirection: 'row', alignItems: 'flex-end', justifyContent: 'space-between', columnGap: 12 }}>
-        <BenchTime card={card} at={at} kind="numL" stacked />
+        <BenchTime card={card} at={at} kind="numL" old={old} stacked />
         <CardColumn card={card} />
       </View>
-      <CardRibbon card={card} at={at} height={70} />
+      <CardRibbon card={card} at={at} height={70} stale={old} />
       <Link
         href={path}
         onPress={() => onOpen(path)}

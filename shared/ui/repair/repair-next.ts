@@ -32,7 +32,7 @@ export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext 
   const step = presentStep(repair.steps)?.step ?? null;
   switch (step) {
     case 'read':
-      return go('Read the pack', `${page}/reading?stage=arrival`);
+      return go('Read the pack', `${page}/reading`);
     case 'second-source':
       return go('Enter the second source', `${page}/second-source`);
     case 'target':
@@ -51,7 +51,7 @@ export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext 
     case 'prove':
       return standing(repair.readings).some(({ stage }) => stage !== 'arrival')
         ? go('Prove the repair', `${page}/prove`)
-        : go('Read the pack after the fit', `${page}/reading?stage=after-fit`);
+        : go('Read the pack after the fit', `${page}/reading`);
     case null:
       return { kind: 'hand-over', title: 'Hand it over' };
   }

@@ -14,7 +14,7 @@ import { signOf, stepNumber, stepsOfCard, vehicleAndBay, waitsFor } from './repa
 import { StepBars } from './step-strip';
 
 /** The repairs of the phone, rows as the bench's. The whole row opens it. */
-export function RepairRows({ cards, at, onOpen }: RepairsShown) {
+export function RepairRows({ cards, at, old = false, onOpen }: RepairsShown) {
   const styles = useStyles();
   const { zone, marks } = useFormats();
   const moments = (instant: string) => moment(Date.parse(instant), zone, at.now, marks);
@@ -61,13 +61,15 @@ export function RepairRows({ cards, at, onOpen }: RepairsShown) {
               </View>
               {charge && !card.block ? (
                 <View style={styles.line}>
-                  <BenchTime card={charge} at={at} kind="numM" />
+                  <BenchTime card={charge} at={at} old={old} kind="numM" />
                   <Txt kind="small" tone="ink2" nowrap>
                     {card.people[0] ? firstName(card.people[0].name) : 'nobody'}
                   </Txt>
                 </View>
               ) : null}
-              {charge && isUnderWay(charge) ? <CardRibbon card={charge} at={at} height={48} axis={false} /> : null}
+              {charge && isUnderWay(charge) ? (
+                <CardRibbon card={charge} at={at} height={48} axis={false} stale={old} />
+              ) : null}
             </PressableLink>
           </View>
         );

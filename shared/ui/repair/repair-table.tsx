@@ -6,12 +6,15 @@ import { useFormats } from '../format/formats';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 import { StageTag } from '../stage/stage-tag';
+import { freshTone } from '../states/stale';
 import { signOf, stepsOfCard, vehicleAndBay, waitsFor } from './repair-words';
 import { StepBars } from './step-strip';
 
 export interface RepairsShown {
   cards: readonly RepairCardDto[];
   at: CardClock;
+  /** The link is down: figures turn grey. */
+  old?: boolean;
   onOpen: (id: string) => void;
 }
 
@@ -20,7 +23,7 @@ export const isLate = (card: RepairCardDto, now: number): boolean =>
   card.state === 'open' && card.promisedAt !== null && Date.parse(card.promisedAt) < now;
 
 /** The repairs of the desk: what needs somebody first. Arrow keys walk the rows, Enter opens. */
-export function RepairTable({ cards, at, onOpen }: RepairsShown) {
+export function RepairTable({ cards, at, old = false, onOpen }: RepairsShown) {
   const { zone, marks } = useFormats();
   const moments = (instant: string) => moment(Date.parse(instant), zone, at.now, marks);
   return (
@@ -73,7 +76,7 @@ export function RepairTable({ cards, at, onOpen }: RepairsShown) {
             const ready = card.charge ? readyOf(card.charge, at) : null;
             return ready ? (
               <View style={{ flexDirection: 'row', alignItems: 'baseline', columnGap: 6 }}>
-                <Txt kind="numS" nowrap>
+                <Txt kind="numS" nowrap tone={freshTone(old)}>
                   {readyAt(ready, zone, at.now, marks)}
                 </Txt>
                 <Txt kind="small" tone="ink2" nowrap>{`(${readyBounds(ready, zone, at.now, marks)})`}</Txt>

@@ -149,12 +149,12 @@ describe('the next thing to do', () => {
     return next.kind === 'go' ? next.path : next.kind;
   };
   it.each([
-    ['read', '/repairs/r1/reading?stage=arrival'],
+    ['read', '/repairs/r1/reading'],
     ['second-source', '/repairs/r1/second-source'],
     ['target', '/repairs/r1/target'],
     ['spare', '/repairs/r1/spares'],
     ['charge', '/plan?repair=r1'],
-    ['prove', '/repairs/r1/reading?stage=after-fit'],
+    ['prove', '/repairs/r1/reading'],
     [null, 'hand-over'],
   ] as const)('at the step %s is %s', (step, to) => expect(path(repairOf(step))).toBe(to));
 
