@@ -36,7 +36,6 @@ function decoded(bytes: Uint8Array): string {
 }
 
 /** Signs that no table holds; a picture, an archive and a spreadsheet's own file are full of them. */
-// eslint-disable-next-line no-control-regex -- these very signs are looked for
 const binary = /[\u0000-\u0008\u000e-\u001f]/;
 
 /** Lines of a text, an end of line at the end not counted as one more. */
