@@ -3,7 +3,7 @@ import { afterEach, beforeEach, expect, it, vi } from 'vitest';
 import Prove from '@/app/(workshop)/repairs/[id]/prove';
 import { draw, emptyDevice, press } from '../charges/bench-of';
 import { fakeServer } from '../workshop/server';
-import { reading, repairOf } from './repair-of';
+import { reading, repairOf } from './read-repair-of';
 
 const gone = vi.fn();
 vi.mock('expo-router', async (original) => ({

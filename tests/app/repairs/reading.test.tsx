@@ -3,7 +3,7 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import PackReading from '@/app/(workshop)/repairs/[id]/reading';
 import { draw, emptyDevice, meters, press } from '../charges/bench-of';
 import { fakeServer, problem } from '../workshop/server';
-import { repairOf } from './repair-of';
+import { repairOf } from './read-repair-of';
 
 const gone = vi.fn();
 vi.mock('expo-router', async (original) => ({

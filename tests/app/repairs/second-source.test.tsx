@@ -5,7 +5,7 @@ import type { Role } from '@/shared/contract/roles';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import { draw, emptyDevice, meters, press } from '../charges/bench-of';
 import { fakeServer } from '../workshop/server';
-import { reading, repairOf, source } from './repair-of';
+import { reading, repairOf, source } from './read-repair-of';
 
 const gone = vi.fn();
 vi.mock('expo-router', async (original) => ({

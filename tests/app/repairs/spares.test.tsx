@@ -5,7 +5,7 @@ import type { TargetDto } from '@/shared/contract/pack-reading';
 import type { CandidateDto, RepairPageDto } from '@/shared/contract/repair';
 import { draw, emptyDevice, press } from '../charges/bench-of';
 import { fakeServer, problem } from '../workshop/server';
-import { reading, repairOf } from './repair-of';
+import { reading, repairOf } from './read-repair-of';
 
 const gone = vi.fn();
 vi.mock('expo-router', async (original) => ({

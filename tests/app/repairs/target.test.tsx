@@ -4,7 +4,7 @@ import Target from '@/app/(workshop)/repairs/[id]/target';
 import type { ComputedTargetDto } from '@/shared/contract/pack-reading';
 import { draw, emptyDevice, meters, press } from '../charges/bench-of';
 import { fakeServer } from '../workshop/server';
-import { reading, repairOf, source } from './repair-of';
+import { reading, repairOf, source } from './read-repair-of';
 
 const gone = vi.fn();
 vi.mock('expo-router', async (original) => ({
