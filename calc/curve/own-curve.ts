@@ -70,7 +70,7 @@ function failed(problems: CurveProblem[]): OwnCurve {
 }
 
 function rangeProblems(points: readonly CurvePoint[], chemistry: ChemistryId): CurveProblem[] {
-  const { chargeLimitVolts, dischargeLimitVolts, id } = CHEMISTRIES[chemistry];
+  const { chargeLimitVolts, dischargeLimitVolts } = CHEMISTRIES[chemistry];
   const shipped = publishedCurves(chemistry).map(({ curve }) => curve.volts[0]!);
   const least = Math.min(dischargeLimitVolts, ...shipped) - BEYOND_VOLTS;
   const most = chargeLimitVolts + BEYOND_VOLTS;
@@ -84,7 +84,7 @@ function rangeProblems(points: readonly CurvePoint[], chemistry: ChemistryId): C
       row,
       text: millivolts
         ? `${volts} looks like millivolts. In volts it is ${(volts / 1000).toFixed(3)}. Give volts.`
-        : `${volts}\u00a0V cannot be a cell at rest of ${id}: those lie between ${least.toFixed(2)} and ${most.toFixed(2)}\u00a0V. Give the volts of one cell, or choose the chemistry.`,
+        : `${volts}\u00a0V cannot be a cell of this chemistry at rest: those lie between ${least.toFixed(2)} and ${most.toFixed(2)}\u00a0V. Give the volts of one cell, or choose the chemistry.`,
     });
     return found;
   });

@@ -4,6 +4,7 @@ import { LIVE_SPREADS } from './live-spreads';
 import { MODEL_AXIS } from './live-draws';
 import type { LiveModel } from './live-model';
 import type { Followed } from './follow-readings';
+import { mean } from '../statistics/mean';
 
 /** A resistance is not nothing. */
 const LEAST_FACTOR = 0.2;
@@ -43,5 +44,3 @@ export function learnedModel(
     weights: set.weights,
   };
 }
-
-const mean = (values: readonly number[]): number => values.reduce((sum, one) => sum + one, 0) / values.length;

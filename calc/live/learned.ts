@@ -4,13 +4,12 @@ import type { Sample } from '../plan/samples';
 import { leadOhmOf } from './live-draws';
 import type { LivePast } from './live-rounds';
 import type { ParticleSet } from './particle-set';
+import { mean } from '../statistics/mean';
 
 /** Learned is what has lost at least this share of its variance: less comes about by chance in a set of this size. */
 const LEARNED_SHARE = 0.4;
 
 export const NOTHING_LEARNED: Reckoning['learned'] = { capacityAh: null, longOhm: null, leadOhm: null };
-
-const meanOf = (values: readonly number[]): number => values.reduce((sum, one) => sum + one, 0) / values.length;
 
 /** What the samples of a charge say of its module and leads, before the readings and after. */
 export class Learns {
@@ -27,8 +26,8 @@ export class Learns {
     const step = round?.lanes.length === 1 ? round.lanes[0]!.step : null;
     const channel = model.input.channels.find((one) => one.channelId === step?.channelIds[0]);
     this.numbers = {
-      capacityAh: ({ capacityAh }) => meanOf(capacityAh),
-      longOhm: ({ longOhm }) => meanOf(longOhm),
+      capacityAh: ({ capacityAh }) => mean(capacityAh),
+      longOhm: ({ longOhm }) => mean(longOhm),
       leadOhm: channel ? (sample) => leadOhmOf(channel, sample) : null,
     };
     this.prior = {

@@ -6,7 +6,7 @@ import type { Ahead } from './live-ahead';
 import { livePast, type LivePast, type ReplayInput } from './live-rounds';
 import { endOf, type AheadClock } from './live-segments';
 import { rested } from './module-state';
-import { restSeen } from './rest-readings';
+import { restSeen, type RestSeen } from './rest-readings';
 
 /** What of the clock is the same in all samples. */
 export interface FixedClock {
@@ -16,8 +16,8 @@ export interface FixedClock {
   /** The first round still to come begins here: now, or with the hands after it. */
   restS: number;
   checkS: number;
-  waitS: number;
-  settledAtS: number | null;
+  /** What readings of the rest say; null: current is still to come. */
+  seen: RestSeen | null;
 }
 
 /** The parts of the clock that the samples share: now or the last current, the rest, the check. */
@@ -48,16 +48,15 @@ export function fixedClock(
     settleSeconds(endState.over, tau, model.settledVolts(model.groups.length)),
     offS,
   );
-  const settledAtS =
+  const seen =
     currentEndS === null
       ? null
-      : restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, replay, past, currentEndS, s))
-          .settledAtS;
-  return { nowS, currentEndS, restS, checkS: workshop.checkS, waitS: 0, settledAtS };
+      : restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, replay, past, currentEndS, s));
+  return { nowS, currentEndS, restS, checkS: workshop.checkS, seen };
 }
 
 /** The module at an instant of the rest: replayed to the end of current, then at rest. */
-export function stateBack(model: PlanModel, replay: ReplayInput, past: LivePast, currentEndS: number, s: number) {
+function stateBack(model: PlanModel, replay: ReplayInput, past: LivePast, currentEndS: number, s: number) {
   if (s >= past.state.s) return past.state;
   const atEnd = livePast(model, replay, currentEndS);
   return rested(model, atEnd.state, Math.max(s, currentEndS));
@@ -73,8 +72,9 @@ export function finishOf(fixed: FixedClock, ahead: Ahead, secondsOf: SecondsOf):
   return at + fixed.restS + fixed.checkS;
 }
 
+/** The rest ends as reckoned, or where readings show before that it has settled. */
 const restEnd = (fixed: FixedClock, currentEndS: number): number =>
-  fixed.settledAtS === null ? currentEndS + fixed.restS : Math.min(currentEndS + fixed.restS, fixed.settledAtS);
+  Math.min(currentEndS + fixed.restS, fixed.seen?.settledAtS ?? Infinity);
 
 /**
  * The middle of the samples and the nominal run may end minutes apart, and the nominal one says when the current is over. What
@@ -109,12 +109,6 @@ export function likelyClock(fixed: FixedClock, ahead: Ahead, p50: number): Ahead
     return one;
   });
   return { rounds, currentEndS: at, restEndS: at + fixed.restS, readyS: at + fixed.restS + fixed.checkS };
-}
-
-/** Readings show that it has settled: the rest ends there. */
-export function shorten(clock: AheadClock, fixed: FixedClock): void {
-  clock.restEndS = restEnd(fixed, clock.currentEndS);
-  clock.readyS = clock.restEndS + fixed.checkS;
 }
 
 function lastCelsius(readings: readonly LiveReading[], nowS: number): number | null {

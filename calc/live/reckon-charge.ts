@@ -11,14 +11,13 @@ import { liveAhead, type Ahead } from './live-ahead';
 import { liveModel, type LiveModel } from './live-model';
 import { livePast, type ReplayInput } from './live-rounds';
 import { endOf, liveSegments } from './live-segments';
-import { finishOf, fixedClock, likelyClock, shorten, stateBack } from './live-clock';
+import { finishOf, fixedClock, likelyClock } from './live-clock';
 import { isOverrun, stageOf, taperOf } from './live-stage';
 import { followReadings } from './follow-readings';
 import { learnedTimes } from './learned-times';
 import { learnedModel } from './learned-model';
 import { liveDoubt } from './live-doubt';
 import { thinReadings } from './thin-readings';
-import { restSeen } from './rest-readings';
 
 /**
  * The state of a running charge from its plan and its readings: where each group stands, the stage, and when it will be ready.
@@ -54,7 +53,6 @@ export function reckonCharge(input: ReckonInput): Reckoning {
   const byS = bandOf(seconds, model.weights);
   const clock = likelyClock(fixed, ahead, byS.p50);
   const readyS = shifted(byS, clock.readyS - byS.p50);
-  if (fixed.settledAtS !== null) shorten(clock, fixed);
 
   const currentEndS = clock.currentEndS;
   const running = clock.rounds[0];
@@ -63,10 +61,7 @@ export function reckonCharge(input: ReckonInput): Reckoning {
   const stepEndS = isResting || current.endedAtS !== null ? (endOf(current) ?? nowS) : (running?.toS ?? nowS);
   const waits = !isResting && current.endedAtS !== null;
   const flowing = current.open && !current.pasts.every((one) => one.noCurrent) && !over;
-  const seen = isResting
-    ? restSeen(model, input.readings, currentEndS, nowS, (s) => stateBack(model, replay, past, currentEndS, s))
-    : null;
-  const groups = toGroups(model, kept, past, current, flowing, seen?.restVolts ?? null);
+  const groups = toGroups(model, kept, past, current, flowing, fixed.seen?.restVolts ?? null);
   const lane = current.lanes[0]!;
   const amps = flowing ? current.pasts.reduce((sum, one) => sum + (one.endedAtS === null ? one.amps : 0), 0) : 0;
 

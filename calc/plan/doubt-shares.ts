@@ -1,6 +1,7 @@
 import { quantile } from '../statistics/quantile';
 import type { Doubt } from '../plan-types';
 import { DOUBT_OF_AXIS, SAMPLE_AXES, type Sample } from './samples';
+import { mean } from '../statistics/mean';
 
 /** Least samples for a regression on the axes; below it the doubts cannot be told apart. */
 const LEAST_SAMPLES = 16;
@@ -42,4 +43,3 @@ export function dominantDoubt(samples: Sample[], seconds: readonly number[]): { 
 }
 
 const width = (values: readonly number[]): number => quantile(values, 0.9) - quantile(values, 0.1);
-const mean = (values: readonly number[]): number => values.reduce((sum, value) => sum + value, 0) / values.length;

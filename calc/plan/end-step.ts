@@ -2,11 +2,11 @@ import { chargeThroughTerminals } from '../charge-through-terminals';
 import { slopeAtSoc, voltsAtSoc } from '../curve/ocv';
 import type { ChannelParameters, Way } from '../plan-types';
 import { setVoltageCap } from '../set-voltage-cap';
+import { chargerDraft } from './charger-draft';
 import type { DraftStep, NotPossible } from './draft';
 import type { PlanModel } from './plan-model';
-import { ampsWidening, channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
-import { leadOhmIn, leadOhmOf } from './leads';
-import { chargerSd, sampleRun } from './sample-run';
+import { channelAmps, moduleCurrentShare, snappedAmps } from './charger-amps';
+import { leadOhmOf } from './leads';
 import { groupsAt, prechargeAmps, sampleString } from './series-step';
 import { limitText } from './words';
 
@@ -107,47 +107,32 @@ export function endStep(
 
   const socAfter = [...soc];
   groupIndexes.forEach((group, at) => (socAfter[group] = reached[at]!));
-  const leads = leadOhmIn(channel);
-  const run = sampleRun({
+  return chargerDraft(
     model,
-    ...(leads === undefined ? {} : { leadOhmIn: leads }),
-    currentWidening: ampsWidening(channel, source.maxAmps, model.spreads.currentRelative),
-    source,
-    sign,
-    count,
-    linkOhm,
-    chargerSd: chargerSd(model, channel, count),
-    aimVolts: setVolts,
-    first: false,
-    endAmps: Math.max(endAmps, channel.minAmps),
-    stringIn: sampleString(model, groupIndexes, direction, () => 0),
-  });
-  const quadrature = run(model.nominal).seconds;
-  const scale = quadrature > 0 ? result.stopAtS / quadrature : 0;
-  return {
-    kind: 'bulk',
-    way,
-    channel,
-    resistorId: null,
-    groupIndexes,
-    together: false,
-    direction,
-    setVolts,
-    setAmps: maxAmps,
-    seconds: result.stopAtS,
-    voltageLimitAtS: result.voltageLimitAtS,
-    ampHours: result.ampHours,
-    wattHours: result.wattHours,
-    endAmps: result.endAmps,
-    settleS: result.settleS,
-    socAfter,
-    polarisationAfter: result.groups.map((group) => group.polarisationVolts),
-    trace: result.trace ?? [],
-    groupsAcross: count,
-    capVolts: cap,
-    secondsIn: (sample) => run(sample).seconds * scale,
-    ampHoursIn: (sample) => run(sample).ampHours,
-  };
+    result,
+    {
+      kind: 'bulk',
+      way,
+      channel,
+      groupIndexes,
+      direction,
+      setVolts,
+      setAmps: maxAmps,
+      socAfter,
+      polarisationAfter: result.groups.map((group) => group.polarisationVolts),
+      capVolts: cap,
+    },
+    {
+      source,
+      sign,
+      count,
+      linkOhm,
+      aimVolts: setVolts,
+      first: false,
+      endAmps: Math.max(endAmps, channel.minAmps),
+      stringIn: sampleString(model, groupIndexes, direction, () => 0),
+    },
+  );
 }
 
 /** The nearest that can be dialled in without passing the end. */

@@ -15,6 +15,7 @@ import type { ModuleState } from './single-group';
 import { ampHoursToFirst, ampHoursToVolts, stringCharge, stringVolts } from './string-charge';
 import { trimSteps } from './trim';
 import { ampsText, groupsText, voltsText } from './words';
+import { mean } from '../statistics/mean';
 
 /** Joined to a neighbour of known charge through a resistor, until the spare is at the target; no charger. */
 export function resistorWay(
@@ -190,4 +191,3 @@ function sampleRun(
 }
 
 const sumOf = (values: number[]): number => values.reduce((sum, value) => sum + value, 0);
-const mean = (values: number[]): number => sumOf(values) / values.length;

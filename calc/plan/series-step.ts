@@ -2,14 +2,12 @@ import { chargeThroughTerminals } from '../charge-through-terminals';
 import { voltsAtSoc } from '../curve/ocv';
 import type { ChannelParameters, Finish, StepKind, Way } from '../plan-types';
 import type { CellGroup, Direction, StepResult } from '../types';
-import { chargerSd, sampleRun } from './sample-run';
+import { chargerDraft } from './charger-draft';
 import type { DraftStep, NotPossible } from './draft';
 import type { PlanModel } from './plan-model';
 import type { Sample } from './samples';
 import { settleSource, type SourceSettings } from './source-settings';
 import { stringCharge, type StringCharge } from './string-charge';
-import { ampsWidening } from './charger-amps';
-import { leadOhmIn } from './leads';
 import { ampsText, groupText, limitText, millivoltsText } from './words';
 
 /** An end current below this cannot be read off any charger, A. */
@@ -143,50 +141,35 @@ function toDraftStep(input: SeriesStepInput, settings: SourceSettings, result: S
   const { channel, aimVolts } = input;
   const ohm = source.leadResistanceOhm + input.linkOhm + input.stringIn(model.nominal).ohm;
   const markVolts = Math.max(input.markVolts, channel.minAmps * ohm);
-  const leads = leadOhmIn(channel);
-  const run = sampleRun({
+  return chargerDraft(
     model,
-    ...(leads === undefined ? {} : { leadOhmIn: leads }),
-    currentWidening: ampsWidening(channel, source.maxAmps, model.spreads.currentRelative),
-    source,
-    sign,
-    count: groups.length,
-    linkOhm: input.linkOhm,
-    chargerSd: chargerSd(model, channel, groups.length),
-    aimVolts,
-    first: input.first,
-    endAmps:
-      finish === 'on-the-mark' && setVolts !== null
-        ? Math.max((sign * (setVolts - aimVolts) + markVolts) / ohm, LEAST_END_AMPS)
-        : null,
-    stringIn: input.stringIn,
-  });
-  const quadrature = run(model.nominal).seconds;
-  const scale = quadrature > 0 ? result.stopAtS / quadrature : 0;
-  return {
-    kind: input.kind,
-    way: input.way,
-    channel: input.channel,
-    resistorId: null,
-    groupIndexes,
-    together: false,
-    direction,
-    setVolts: settings.setVolts,
-    setAmps: settings.setAmps,
-    seconds: result.stopAtS,
-    voltageLimitAtS: result.voltageLimitAtS,
-    ampHours: result.ampHours,
-    wattHours: result.wattHours,
-    endAmps: result.endAmps,
-    settleS: result.settleS,
-    socAfter,
-    polarisationAfter: groupIndexes.map((_, at) => result.groups[joined ? 0 : at]!.polarisationVolts),
-    trace: result.trace ?? [],
-    groupsAcross: groups.length,
-    capVolts: settings.capVolts,
-    secondsIn: (sample) => run(sample).seconds * scale,
-    ampHoursIn: (sample) => run(sample).ampHours,
-  };
+    result,
+    {
+      kind: input.kind,
+      way: input.way,
+      channel,
+      groupIndexes,
+      direction,
+      setVolts,
+      setAmps: settings.setAmps,
+      socAfter,
+      polarisationAfter: groupIndexes.map((_, at) => result.groups[joined ? 0 : at]!.polarisationVolts),
+      capVolts: settings.capVolts,
+    },
+    {
+      source,
+      sign,
+      count: groups.length,
+      linkOhm: input.linkOhm,
+      aimVolts,
+      first: input.first,
+      endAmps:
+        finish === 'on-the-mark' && setVolts !== null
+          ? Math.max((sign * (setVolts - aimVolts) + markVolts) / ohm, LEAST_END_AMPS)
+          : null,
+      stringIn: input.stringIn,
+    },
+  );
 }
 
 /** The module's own groups as a string in one sample, after what earlier steps have moved. */

@@ -5,6 +5,7 @@ import { Charger } from '../entities/charger';
 import { LevellingResistor } from '../entities/levelling-resistor';
 import { Meter } from '../entities/meter';
 import { ModuleType } from '../entities/module-type';
+import { nothingMore } from '../services/module-type-defaults';
 import { demoWorkshopId as workshopId } from './demo-workshop';
 
 const DAY = 86_400_000;
@@ -15,18 +16,6 @@ export const channelId = (name: string): string => `demo-channel-${name}`;
 export const handMeterId = 'demo-meter-hand-1';
 
 type TypeColumns = Omit<ModuleType, 'id' | 'workshopId' | 'rev' | 'createdAt'>;
-
-const nothingMore = {
-  curveId: null,
-  ownCurve: null,
-  pulseShortS: null,
-  pulseShortMilliohm: null,
-  pulseLongerS: null,
-  pulseLongerMilliohm: null,
-  coldCurrentPercent: null,
-  warmCurrentPercent: null,
-  prechargeBelowVolts: null,
-} as const;
 
 const lithium = {
   ...nothingMore,

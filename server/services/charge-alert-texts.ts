@@ -1,5 +1,6 @@
 /** What each alert says: what was seen, then what to check first (look: §1, §8). */
 import type { OddSeen } from '@/calc/live-types';
+import { oddCheckFirst } from '@/shared/contract/odd-check';
 import type { ChargeFile } from './charge-file';
 import { isChecked, promisedAt } from './charge-due';
 import { restedS } from './charge-progress';
@@ -128,7 +129,7 @@ export function oddText(file: ChargeFile, odd: OddSeen): AlertText {
   return {
     title: titleAtChannel(file, presentStep(file)),
     seen: `${oddSeen(odd, valueOf(odd.seen))} ${valueOf(odd.expected)} was expected.`,
-    checkFirst: oddCheck(odd, names === '' ? 'the resistor' : names),
+    checkFirst: upperFirst(oddCheckFirst(odd, names === '' ? 'the resistor' : names)),
   };
 }
 
@@ -138,24 +139,6 @@ function oddSeen({ kind, quantity, group }: OddSeen, seen: string): string {
   if (kind === 'too-warm') return `It has warmed to ${seen}.`;
   if (group !== null) return `Group ${group + 1} reads ${seen}.`;
   return quantity === 'terminal-volts' ? `The clips read ${seen}.` : `${seen} was read.`;
-}
-
-function oddCheck({ kind, group }: OddSeen, channel: string): string {
-  const place = group === null ? 'the groups' : `group ${group + 1}`;
-  switch (kind) {
-    case 'voltage-jump':
-      return 'The clips and how they hold, then the leads.';
-    case 'no-current':
-      return `Whether ${channel} is on, then the clips, then its set voltage.`;
-    case 'stuck-current':
-      return `Warmth at ${place}, then what ${channel} is set to, then the clips.`;
-    case 'group-ahead':
-      return `Warmth at ${place}, then the meter tip on its tab, then its busbar.`;
-    case 'too-warm':
-      return 'Where it is warmest, then the clips there. Hold the charge where it rises on.';
-    case 'unexplained':
-      return 'The reading itself, then the clips, then the set voltage.';
-  }
 }
 
 /** The group that is behind by more than the workshop lets pass; null: none is. */

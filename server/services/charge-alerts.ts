@@ -19,7 +19,7 @@ import {
 import { isChecked, overdueSince, TOLD_AGAIN_MS } from './charge-due';
 import type { ChargeFile } from './charge-file';
 import { dueLookIn } from './charge-look-ins';
-import { instantOf } from './charge-clock';
+import { readingInstantOf } from './charge-clock';
 import { isUnderWay, swapWait } from './charge-stages';
 import { durationText } from './charge-words';
 import { newId } from './ids';
@@ -71,7 +71,7 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
     wanted.push({
       kind: 'odd-reading',
       level: 'alarm',
-      since: instantOf(charge, odd.sinceS),
+      since: readingInstantOf(charge, odd.sinceS),
       key: odd.kind,
       text: oddText(file, odd),
     });

@@ -30,6 +30,11 @@ export function secondsOf(charge: Pick<Charge, 'startedAt'>, at: number): number
   return (at - (charge.startedAt ?? at)) / 1000;
 }
 
+/** Instant of a reading by its seconds, to the millisecond: rounded up as what is to come is, it would lie after the reading. */
+export function readingInstantOf(charge: Pick<Charge, 'startedAt'>, seconds: number): number {
+  return (charge.startedAt ?? 0) + Math.round(seconds * 1000);
+}
+
 /** Instant of the option's own 0, on which its segments and steps stand: the clip-on, or what it was shifted to. */
 export function optionZeroAt(charge: Pick<Charge, 'startedAt' | 'clipOnAt' | 'option'>): number {
   return charge.startedAt === null ? charge.clipOnAt : charge.startedAt - charge.option.currentStartS * 1000;

@@ -19,7 +19,7 @@ import { answersOf, eventsOf } from '../repositories/charge-rows.repository';
 import { chargeNames, findTopUpOf, type ChargeName } from '../repositories/charges.repository';
 import { personRef } from './alert-dto';
 import { checkSheet } from './charge-checks';
-import { chargeNow, instantOf } from './charge-clock';
+import { chargeNow, instantOf, readingInstantOf } from './charge-clock';
 import { overdueSince } from './charge-due';
 import type { ChargeFile } from './charge-file';
 import { nextLookIn } from './charge-look-ins';
@@ -228,8 +228,7 @@ function oddDto({ charge }: ChargeFile): OddDto | null {
   const odd = charge.reckoning?.reckoning.odd ?? null;
   if (odd === null || !isUnderWay(charge.stage)) return null;
   const { sinceS, ...seen } = odd;
-  // The instant of a reading, to the millisecond: rounded up as what is to come is, it would lie after that reading.
-  return { ...seen, since: toInstant((charge.startedAt ?? 0) + Math.round(sinceS * 1000)) };
+  return { ...seen, since: toInstant(readingInstantOf(charge, sinceS)) };
 }
 
 function expectedOf({ charge }: ChargeFile): ChargeDto['expected'] {

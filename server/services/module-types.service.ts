@@ -15,6 +15,7 @@ import {
 import { countPacksOfModuleType } from '../repositories/pack-types.repository';
 import { announceEquipment } from './announce';
 import { newId } from './ids';
+import { nothingMore } from './module-type-defaults';
 import { moduleTypeDto } from './module-types-dto';
 import { nameTaken } from './name-taken';
 import { pulseSeconds } from './plan-parameters';
@@ -38,7 +39,7 @@ export async function addModuleType(
   const { workshopId } = member;
   const dto = await inTransaction(deps, async (manager) => {
     await refuseTakenName(manager, workshopId, input.name, null);
-    const type = Object.assign(new ModuleType(), none, given(input), {
+    const type = Object.assign(new ModuleType(), nothingMore, given(input), {
       id: newId(),
       workshopId,
       rev: 1,
@@ -128,19 +129,6 @@ async function dtoOf(manager: EntityManager, workshopId: string, id: string): Pr
   const type = await known(manager, workshopId, id);
   return moduleTypeDto(type, (await countTypeUse(manager, workshopId)).get(id));
 }
-
-/** What may be left out of the form, as a new type has it. */
-const none = {
-  curveId: null,
-  ownCurve: null,
-  pulseShortS: null,
-  pulseShortMilliohm: null,
-  pulseLongerS: null,
-  pulseLongerMilliohm: null,
-  coldCurrentPercent: null,
-  warmCurrentPercent: null,
-  prechargeBelowVolts: null,
-} satisfies Partial<ModuleType>;
 
 /** What was left out stays as it is. */
 const given = (input: ModuleTypeInput): ModuleTypeInput =>

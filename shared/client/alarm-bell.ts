@@ -47,10 +47,8 @@ export function useAlarmBell(): void {
     const stop = onAlert((alert) => {
       queryClient.setQueryData(alertsQuery().queryKey, (known) => known && withAlert(known, alert));
       if (document.visibilityState === 'visible' || !concerns(alert, personId)) return;
-      const told = toldOf(queryClient.getQueryData(alertsQuery().queryKey) ?? [alert]);
-      told.of(alert).met = true;
-      told.keep();
-      show(alert);
+      // Told again or passed on it is news, also where the first telling was met.
+      void tellByNotice(alert);
     });
     return () => {
       clearInterval(timer);
@@ -71,8 +69,8 @@ function ringFor(alerts: AlertDto[], personId: string): void {
   const told = toldOf(alerts);
   const due = alerts.filter((alert) => isOpen(alert) && concerns(alert, personId));
   for (const alert of due.filter((one) => !told.of(one).met)) {
-    if (document.visibilityState !== 'visible' || now - ringsSince(alert) > missedAfterMs) show(alert);
-    told.of(alert).met = true;
+    if (document.visibilityState !== 'visible' || now - ringsSince(alert) > missedAfterMs) void tellByNotice(alert);
+    else told.of(alert).met = true;
   }
   // Before the first tap nothing is heard: what is due waits for the tap.
   if (canRing()) {
@@ -88,13 +86,26 @@ function ringFor(alerts: AlertDto[], personId: string): void {
   told.keep();
 }
 
-function show(alert: AlertDto): void {
-  void showNotice({
-    title: alert.title,
-    body: [alert.seen, alert.checkFirst].filter(Boolean).join(' '),
-    url: `/charges/${alert.chargeId}`,
-    tag: alert.id,
-  });
+const beingTold = new Set<string>();
+
+/** Shows it, and counts it as met only where the device did: one that may not show notices yet has missed it still. */
+async function tellByNotice(alert: AlertDto): Promise<void> {
+  if (beingTold.has(alert.id)) return;
+  beingTold.add(alert.id);
+  try {
+    const shown = await showNotice({
+      title: alert.title,
+      body: [alert.seen, alert.checkFirst].filter(Boolean).join(' '),
+      url: `/charges/${alert.chargeId}`,
+      tag: alert.id,
+    });
+    if (!shown) return;
+    const told = toldOf(queryClient.getQueryData(alertsQuery().queryKey) ?? [alert]);
+    told.of(alert).met = true;
+    told.keep();
+  } finally {
+    beingTold.delete(alert.id);
+  }
 }
 
 /** One low tone when the rest of one's own charge begins. */

@@ -38,7 +38,11 @@ const bad: [name: string, content: string | Buffer, sentence: RegExp][] = [
     csv(fallen),
     /Row 7: 3\.401\sV does not rise above .* of row 6\. Take out the one that was read wrong\./,
   ],
-  ['two-cells.csv', csv(doubled), /Row 2: .*\sV cannot be a cell at rest .* Give the volts of one cell/],
+  [
+    'two-cells.csv',
+    csv(doubled),
+    /Row 2: .*\sV cannot be a cell of this chemistry at rest.* Give the volts of one cell/,
+  ],
   ['few.csv', csv(lines.slice(0, 4)), /4 points are too few\. Give 8 or more\./],
   ['photo.png', picture, /photo\.png is no plain text\. Save the table as CSV/],
   ['empty.csv', '', /empty\.csv is empty\. Choose another file/],

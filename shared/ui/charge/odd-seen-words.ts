@@ -1,5 +1,6 @@
 /** A reading that the reckoning cannot explain, in words: what was seen, what was expected, what to check first. Pure. */
 import type { OddDto, ReadingDto } from '@/shared/contract/charge';
+import { oddCheckFirst } from '@/shared/contract/odd-check';
 import type { LocaleMarks } from '../format/marks';
 import { amps, celsius, clipVolts, volts } from '../format/quantities';
 
@@ -40,30 +41,11 @@ function seenOf(odd: Odd, seen: string): string {
   }
 }
 
-/** @param channel what the charge hangs on: 'A2', 'the charger' */
-function checkOf({ kind, group }: Odd, channel: string): string {
-  const place = group === null ? 'the groups' : `group ${group + 1}`;
-  switch (kind) {
-    case 'voltage-jump':
-      return 'the clips and how they hold, then the leads.';
-    case 'no-current':
-      return `whether ${channel} is on, then the clips, then its set voltage.`;
-    case 'stuck-current':
-      return `warmth at ${place}, then what ${channel} is set to, then the clips.`;
-    case 'group-ahead':
-      return `warmth at ${place}, then the meter tip on its tab, then its busbar.`;
-    case 'too-warm':
-      return 'where it is warmest, then the clips there. Hold the charge where it rises on.';
-    case 'unexplained':
-      return 'the reading itself, then the clips, then the set voltage.';
-  }
-}
-
 /** The three sentences of a call-out. */
 export function oddSeenWords(odd: Odd, channel: string, marks: LocaleMarks): OddWords {
   return {
     seen: `${seenOf(odd, valueOf(odd, odd.seen, marks))} ${valueOf(odd, odd.expected, marks)} was expected.`,
-    checkFirst: checkOf(odd, channel),
+    checkFirst: oddCheckFirst(odd, channel),
   };
 }
 

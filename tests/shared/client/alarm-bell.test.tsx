@@ -239,6 +239,19 @@ describe('an alert that was raised while this device was away', () => {
     expect([played, told]).toEqual([tonesOf('ready'), [noticeOf('a1')]]);
   });
 
+  it('is told by a notice once this device may show them, however long it was known here before', async () => {
+    const permission = vi.fn(() => 'default');
+    Object.defineProperty(Notification, 'permission', { configurable: true, get: permission });
+    vi.setSystemTime(start + 30 * minute);
+    listed = [alert()];
+    await open();
+    await pass(10 * minute);
+    expect(told).toEqual([]);
+    permission.mockReturnValue('granted');
+    await pass(60_000);
+    expect(told).toEqual([noticeOf('a1')]);
+  });
+
   it('rings once with a notice after the connection comes back', async () => {
     await open();
     await tap();

@@ -130,9 +130,7 @@ function Sheet({
         toast({ text: 'The reading is put right. The old one stays in the log.' });
       } else {
         const taken = await log(input satisfies Partial<ReadingInput>);
-        toast({
-          text: taken ? 'Logged. The finish is reckoned from it.' : 'Kept on this device until the connection is back.',
-        });
+        toast({ text: loggedText(taken) });
       }
       onClose();
     },
@@ -159,4 +157,10 @@ function Sheet({
       onClose={onClose}
     />
   );
+}
+
+/** @param taken the charge with the reading in it; null: it waits on this device */
+function loggedText(taken: ChargeDto | null): string {
+  if (taken === null) return 'Kept on this device until the connection is back.';
+  return taken.odd === null ? 'Logged. The finish is reckoned from it.' : 'Logged. It does not fit: see what to check.';
 }
