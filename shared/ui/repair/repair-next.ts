@@ -1,22 +1,13 @@
 /** The one thing to do next with a repair. Pure. */
 import type { RepairDto } from '@/shared/contract/repair';
 import { nextStep } from '../bench/next-step';
+import { planHref } from '../repair-spare/candidate-words';
 import { presentStep, standing } from './repair-words';
 
 export type RepairSheet = 'hand-over' | 'removed' | 'delete' | 'wait' | 'set-aside';
 export type RepairNext =
   | { kind: 'go'; title: string; path: string }
   | { kind: 'hand-over' | 'archive' | 'unarchive' | 'restore'; title: string };
-
-/** Where a charge for the repair is planned, its spare and target filled in. */
-export function planPath({ id, spare, target }: Pick<RepairDto, 'id' | 'spare' | 'target'>): string {
-  const asked = [
-    `repair=${id}`,
-    ...(spare ? [`spare=${spare.id}`] : []),
-    ...(target ? [`target=${target.volts}`] : []),
-  ];
-  return `/plan?${asked.join('&')}`;
-}
 
 /** @param mayDecide whether this person may decide between two sources */
 export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext {
@@ -40,7 +31,10 @@ export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext 
     case 'spare':
       return go('Choose a spare', `${page}/spares`);
     case 'charge': {
-      if (!charge) return go('Plan a charge', planPath(repair));
+      if (!charge) {
+        const plan = planHref(repair);
+        return plan ? go('Plan a charge', plan) : go('Choose a spare', `${page}/spares`);
+      }
       const next = nextStep(charge);
       return next ? go(next.title, next.path) : go('Open the charge', `/charges/${charge.id}`);
     }

@@ -153,10 +153,18 @@ describe('the next thing to do', () => {
     ['second-source', '/repairs/r1/second-source'],
     ['target', '/repairs/r1/target'],
     ['spare', '/repairs/r1/spares'],
-    ['charge', '/plan?repair=r1'],
+    ['charge', '/repairs/r1/spares'],
     ['prove', '/repairs/r1/reading'],
     [null, 'hand-over'],
   ] as const)('at the step %s is %s', (step, to) => expect(path(repairOf(step))).toBe(to));
+
+  it('with a spare and a target is a plan with both, the repair’s number and the module filled in', () => {
+    const target = { volts: 3.968, toleranceMillivolts: 5 } as RepairPageDto['target'];
+    const spare = { id: 's1', label: 'S-0417', shelfPlace: 'D3' };
+    expect(path(repairOf('charge', { spare, target }))).toBe(
+      '/plan?spare=s1&target=3.968&tolerance=5&repair=R-2418&position=17',
+    );
+  });
 
   it('of an open charge is that charge’s own', () => {
     const charge = card('R-2418', 'queued', null, { id: 'c9' });
