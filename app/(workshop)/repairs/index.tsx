@@ -1,6 +1,6 @@
 import { useRouter, type Href } from 'expo-router';
 import { useState } from 'react';
-import { View } from 'react-native';
+import { useWindowDimensions, View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { serverTimeOf, useNow } from '@/shared/client/clock';
 import { useLink } from '@/shared/client/link';
@@ -25,11 +25,16 @@ import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
+/** The table's columns hold their words from this width on, px. */
+const TABLE_FROM = 1280;
+
 /** All repairs: what needs somebody first, then by when the module is ready, then by what was promised. */
 export default function Repairs() {
   const router = useRouter();
   const now = useNow(60_000);
-  const wide = useBreakpoint() === 'wide';
+  const desk = useBreakpoint() === 'wide';
+  // Eight columns and a header with search and filters need more than the least desk has.
+  const wide = useWindowDimensions().width >= TABLE_FROM;
   const seesDeleted = useCan('repair:delete');
   const [view, setView] = useState<RepairView>('open');
   const [typed, setTyped] = useState('');
@@ -82,13 +87,15 @@ export default function Repairs() {
           title="Repairs"
           sub={wide || !counts ? undefined : `${counts.open} open, ${counts.waiting} waiting for a module`}
           middle={
-            <>
-              <View style={{ width: 270 }}>{search}</View>
-              {places}
-            </>
+            wide ? (
+              <>
+                <View style={{ width: 270 }}>{search}</View>
+                {places}
+              </>
+            ) : undefined
           }
           action={<Button title="Start a repair" icon="plus" size="small" onPress={start} />}
-          tools={wide ? undefined : <IconButton icon="plus" label="Start a repair" framed onPress={start} />}
+          tools={desk ? undefined : <IconButton icon="plus" label="Start a repair" framed onPress={start} />}
         />
       }
     >

@@ -13,20 +13,24 @@ import { Button } from '@/shared/ui/primitives/button';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { CandidateRow } from '@/shared/ui/repair-spare/candidate-row';
 import { planHref } from '@/shared/ui/repair-spare/candidate-words';
+import { Foot } from '@/shared/ui/screen/foot';
 import { Empty } from '@/shared/ui/states/empty';
 import { ErrorState } from '@/shared/ui/states/error-state';
 import { Loading } from '@/shared/ui/states/loading';
+import { StepScreen } from './step-screen';
 
 /** Spares of the pack's type for the target of a repair, the soonest first; one of them is reserved. */
 export function ChooseSpare({
   repair,
   target,
-  onPlan,
+  onBack,
+  onGo,
   onStock,
 }: {
   repair: RepairPageDto;
   target: TargetDto;
-  onPlan: (href: string) => void;
+  onBack: () => void;
+  onGo: (href: string) => void;
   onStock: () => void;
 }) {
   const { marks } = useFormats();
@@ -39,15 +43,31 @@ export function ChooseSpare({
   const [problem, setProblem] = useState<string | null>(null);
   const type = types.data?.find(({ id }) => id === repair.pack.moduleTypeId);
   const window = type ? { lowVolts: type.dischargeLimitVolts, highVolts: type.chargeLimitVolts } : null;
-  const plan = planHref(repair);
+  const { charge } = repair;
+  const plan = charge === null ? planHref(repair) : null;
   const told = { onError: (error: Error) => setProblem(sentenceOf(error)) };
   return (
-    <View style={{ rowGap: 14 }}>
+    <StepScreen
+      title="Choose a spare"
+      repair={repair}
+      onBack={onBack}
+      foot={
+        charge ? (
+          <Foot>
+            <Button title="Open the charge" onPress={() => onGo(`/charges/${charge.id}`)} />
+          </Foot>
+        ) : plan ? (
+          <Foot>
+            <Button title="Plan a charge" onPress={() => onGo(plan)} />
+          </Foot>
+        ) : undefined
+      }
+    >
       <Txt>{`Target ${voltsText(target.volts, marks)} ${tolerance(target.toleranceMillivolts / 1000)}`}</Txt>
+      {charge ? <Txt bold>{`${charge.spare.label} is on its charge for this repair, ${charge.number}.`}</Txt> : null}
       {repair.spare && plan ? (
         <View style={{ rowGap: 8 }}>
           <Txt bold>{`${repair.spare.label} is reserved for this repair.`}</Txt>
-          <Button title="Plan a charge" onPress={() => onPlan(plan)} />
           <Button
             look="line"
             title={`Release ${repair.spare.label}`}
@@ -105,6 +125,6 @@ export function ChooseSpare({
       ) : (
         <Loading what="the spares" onRetry={() => void list.refetch()} />
       )}
-    </View>
+    </StepScreen>
   );
 }

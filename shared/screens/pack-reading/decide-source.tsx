@@ -1,5 +1,4 @@
 import { useState } from 'react';
-import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { useNow } from '@/shared/client/clock';
 import { useDraft } from '@/shared/client/drafts';
@@ -15,6 +14,8 @@ import { CallOut } from '@/shared/ui/primitives/call-out';
 import { ChoiceList } from '@/shared/ui/primitives/choice-row';
 import { Field } from '@/shared/ui/primitives/field';
 import { Span, Txt } from '@/shared/ui/primitives/txt';
+import { FormFoot } from '@/shared/ui/spare/form-foot';
+import { StepScreen } from './step-screen';
 
 /** A module position after 'm:', or that neither is right yet. */
 interface Decision {
@@ -28,12 +29,14 @@ export function DecideSource({
   repair,
   reading,
   source,
+  onBack,
   onMeasure,
   onDecided,
 }: {
   repair: RepairPageDto;
   reading: PackReadingDto;
   source: SecondSourceDto;
+  onBack: () => void;
   /** Measures again instead. */
   onMeasure: () => void;
   onDecided: (again: boolean) => void;
@@ -87,7 +90,22 @@ export function DecideSource({
   };
   const people = gate.people.length > 0 ? gate.people.join(' or ') : gate.roles;
   return (
-    <View style={{ rowGap: 14 }}>
+    <StepScreen
+      title="Second source"
+      repair={repair}
+      onBack={onBack}
+      foot={
+        gate.may ? (
+          <FormFoot
+            title={choice === null ? 'Decide' : position === null ? 'Decide: read again' : `Decide: module ${position}`}
+            busy={decide.isPending}
+            offline={offline}
+            problem={problem}
+            onSend={send}
+          />
+        ) : undefined
+      }
+    >
       <CallOut tone="amber" label="The sources disagree">
         <Txt>
           <Span bold>{fact}</Span> Someone must decide before it goes on.
@@ -115,27 +133,11 @@ export function DecideSource({
             maxLength={300}
             onChangeText={(text) => draft.set((last) => ({ ...last, why: text }))}
           />
-          {problem ? (
-            <Txt kind="label" tone="alarm" role="alert">
-              {problem}
-            </Txt>
-          ) : null}
-          <Button
-            title={choice === null ? 'Decide' : position === null ? 'Decide: read again' : `Decide: module ${position}`}
-            busy={decide.isPending}
-            disabled={offline}
-            onPress={send}
-          />
-          {offline ? (
-            <Txt kind="small" tone="ink2">
-              No connection: what you typed is kept here and can be sent when it is back.
-            </Txt>
-          ) : null}
         </>
       ) : (
         <Txt bold>{`${gate.roles.charAt(0).toUpperCase()}${gate.roles.slice(1)} decides. Ask ${people}.`}</Txt>
       )}
       <Button look="line" title="Measure again" onPress={onMeasure} />
-    </View>
+    </StepScreen>
   );
 }

@@ -1,5 +1,4 @@
 import { useMemo, useState } from 'react';
-import { View } from 'react-native';
 import { isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useDraft } from '@/shared/client/drafts';
 import { useLink } from '@/shared/client/link';
@@ -13,10 +12,11 @@ import { useFormats } from '@/shared/ui/format/formats';
 import { volts as voltsText } from '@/shared/ui/format/quantities';
 import { sourceVerdict, type SourceTyped } from '@/shared/ui/pack-reading/source-words';
 import { typedProblem, typedVolts } from '@/shared/ui/pack-reading/typed-pad';
-import { Button } from '@/shared/ui/primitives/button';
 import { Field } from '@/shared/ui/primitives/field';
 import { Select } from '@/shared/ui/primitives/select';
 import { Txt } from '@/shared/ui/primitives/txt';
+import { FormFoot } from '@/shared/ui/spare/form-foot';
+import { StepScreen } from './step-screen';
 
 const notKnown = 'not-known';
 
@@ -24,10 +24,12 @@ const notKnown = 'not-known';
 export function MeasureSource({
   repair,
   reading,
+  onBack,
   onSaved,
 }: {
   repair: RepairPageDto;
   reading: PackReadingDto;
+  onBack: () => void;
   onSaved: () => void;
 }) {
   const { marks } = useFormats();
@@ -99,7 +101,20 @@ export function MeasureSource({
     );
   };
   return (
-    <View style={{ rowGap: 14 }}>
+    <StepScreen
+      title="Second source"
+      repair={repair}
+      onBack={onBack}
+      foot={
+        <FormFoot
+          title="Save the second source"
+          busy={add.isPending}
+          offline={offline}
+          problem={problem}
+          onSend={send}
+        />
+      }
+    >
       <Select
         label="Meter is at module"
         value={typed.modulePosition}
@@ -173,17 +188,6 @@ export function MeasureSource({
           {verdict.text}
         </Txt>
       ) : null}
-      {problem ? (
-        <Txt kind="label" tone="alarm" role="alert">
-          {problem}
-        </Txt>
-      ) : null}
-      <Button title="Save the second source" busy={add.isPending} disabled={offline} onPress={send} />
-      {offline ? (
-        <Txt kind="small" tone="ink2">
-          No connection: what you typed is kept here and can be sent when it is back.
-        </Txt>
-      ) : null}
-    </View>
+    </StepScreen>
   );
 }

@@ -17,6 +17,8 @@ import { ChoiceList } from '@/shared/ui/primitives/choice-row';
 import { FactList } from '@/shared/ui/primitives/fact-list';
 import { Field } from '@/shared/ui/primitives/field';
 import { Txt } from '@/shared/ui/primitives/txt';
+import { FormFoot } from '@/shared/ui/spare/form-foot';
+import { StepScreen } from './step-screen';
 
 interface TargetTyped {
   way: 'computed' | 'typed';
@@ -30,11 +32,13 @@ const initial: TargetTyped = { way: 'computed', volts: '', tolerance: '5', reaso
 export function TakeTarget({
   repair,
   computed,
+  onBack,
   onRead,
   onTaken,
 }: {
   repair: RepairPageDto;
   computed: ComputedTargetDto;
+  onBack: () => void;
   onRead: () => void;
   onTaken: () => void;
 }) {
@@ -82,7 +86,20 @@ export function TakeTarget({
     );
   };
   return (
-    <View style={{ rowGap: 14 }}>
+    <StepScreen
+      title="Target"
+      repair={repair}
+      onBack={onBack}
+      foot={
+        <FormFoot
+          title={own ? 'Take the typed target' : 'Take the computed target'}
+          busy={take.isPending}
+          offline={offline}
+          problem={problem}
+          onSend={send}
+        />
+      }
+    >
       <View>
         <Txt kind="small" tone="ink2">
           Target from the healthy groups
@@ -146,23 +163,7 @@ export function TakeTarget({
         error={errors.toleranceMillivolts}
         onChangeText={(tolerance) => change({ tolerance })}
       />
-      {problem ? (
-        <Txt kind="label" tone="alarm" role="alert">
-          {problem}
-        </Txt>
-      ) : null}
-      <Button
-        title={own ? 'Take the typed target' : 'Take the computed target'}
-        busy={take.isPending}
-        disabled={offline}
-        onPress={send}
-      />
-      {offline ? (
-        <Txt kind="small" tone="ink2">
-          No connection: what you typed is kept here and can be sent when it is back.
-        </Txt>
-      ) : null}
-    </View>
+    </StepScreen>
   );
 }
 

@@ -4,8 +4,9 @@ import { useGate } from '@/shared/client/gate';
 import { useLink } from '@/shared/client/link';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import type { CardClock } from '@/shared/ui/charge/card-model';
-import { clock, dateLong } from '@/shared/ui/format/clock';
+import { clock, dateLong, moment } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
+import { dayOf, daysBetween } from '@/shared/ui/format/zone';
 import { Button } from '@/shared/ui/primitives/button';
 import { IconButton } from '@/shared/ui/primitives/icon-button';
 import { Rule } from '@/shared/ui/primitives/rule';
@@ -85,7 +86,8 @@ export function RepairPage({
       />
     </>
   );
-  const since = dateLong(Date.parse(repair.bookedAt), zone);
+  const booked = Date.parse(repair.bookedAt);
+  const since = `${daysBetween(dayOf(booked, zone), dayOf(now, zone)) === 0 ? 'today ' : ''}${moment(booked, zone, now, marks)}`;
   return (
     <Screen
       header={
@@ -110,7 +112,7 @@ export function RepairPage({
       foot={wide ? undefined : <Foot>{next}</Foot>}
     >
       <View style={{ rowGap: 18, paddingTop: 4 }}>
-        <StepStrip repair={repair} deciders={repair.block?.role ? deciders : null} />
+        <StepStrip repair={repair} deciders={repair.block?.role && !gate.may ? gate.roles : null} />
         <Columns
           order={['work', 'side', 'facts']}
           facts={

@@ -10,7 +10,7 @@ import { faceStacks } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import { GroupList } from './group-list';
 import { layoutPack } from './layout';
-import { oddModules, oddText, packTwin } from './words';
+import { fittingOddText, oddModules, oddText, packTwin, type OddModule } from './words';
 
 export interface PackPictureProps {
   /** V, in the order of the pack's groups. */
@@ -28,6 +28,8 @@ export interface PackPictureProps {
 
 /** Room for the call-out above the bars, and for the group numbers under them, px. */
 const [callHeight, tickHeight] = [30, 22];
+/** From the called module to the first letter, px. */
+const callLead = 24;
 
 /**
  * The pack at a glance: a bar for each group from a broken foot, the median line with what good groups lie within, the
@@ -51,15 +53,7 @@ export function PackPicture({ height = 176, groupAmpHours = null, ...pack }: Pac
         onPress={() => setList(true)}
       >
         <FullWidth height={total}>
-          {(width) => (
-            <Drawing
-              {...pack}
-              width={width}
-              height={height}
-              worst={first?.groups ?? []}
-              call={first ? oddText(first, groupVolts, marks) : null}
-            />
-          )}
+          {(width) => <Drawing {...pack} width={width} height={height} worst={first ?? null} />}
         </FullWidth>
       </Pressable>
       {named.length > 0 ? (
@@ -76,21 +70,24 @@ function Drawing({
   width,
   height,
   worst,
-  call,
   ...pack
 }: Omit<PackPictureProps, 'groupAmpHours' | 'height'> & {
   width: number;
   height: number;
-  worst: readonly number[];
-  call: string | null;
+  /** The module that is called out. */
+  worst: OddModule | null;
 }) {
+  const { marks } = useFormats();
   const { colors } = useTheme();
   const halo = useHalo();
-  const drawn = layoutPack({ ...pack, worst, width, height });
-  const top = call === null ? 0 : callHeight;
+  const drawn = layoutPack({ ...pack, worst: worst?.groups ?? [], width, height });
+  const top = worst === null ? 0 : callHeight;
   const words = { fontFamily: faceStacks.text, fontSize: 14 };
   const right = drawn.callX !== null && drawn.callX > width / 2;
   const turn = right ? -1 : 1;
+  const called = drawn.callX ?? 0;
+  const room = (right ? called : width - called) - callLead;
+  const call = worst && fittingOddText(worst, pack.groupVolts, pack.medianVolts, room, marks);
   return (
     <Svg
       width={width}
@@ -109,7 +106,7 @@ function Drawing({
         <G>
           <Path d={`M${drawn.callX} -2V-20H${drawn.callX + turn * 18}`} stroke={colors.alarm} strokeWidth={2} />
           <SvgText
-            x={drawn.callX + turn * 24}
+            x={drawn.callX + turn * callLead}
             y={-15}
             textAnchor={right ? 'end' : 'start'}
             fill={colors.alarm}

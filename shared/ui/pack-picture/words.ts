@@ -36,6 +36,33 @@ export function oddText(
   return `Module ${position}: ${told.join(', ')}${more > 0 ? ` and ${more} more` : ''}`;
 }
 
+/** Of a word in the call-out's face at 14 px, bold, on average, px: a little more than most. */
+const LETTER_PX = 7.8;
+
+/**
+ * The same as far as it fits: without the groups' names, then the module's worst voltage alone, then its name.
+ * @param room px
+ */
+export function fittingOddText(
+  one: OddModule,
+  groupVolts: readonly number[],
+  medianVolts: number,
+  room: number,
+  marks: LocaleMarks = pointMarks,
+): string {
+  const listed = one.groups.map((group) => groupVolts[group] ?? 0);
+  const worst = listed.reduce((far, value) =>
+    Math.abs(value - medianVolts) > Math.abs(far - medianVolts) ? value : far,
+  );
+  const name = `Module ${one.position}`;
+  const shorter = [
+    oddText(one, groupVolts, marks),
+    ...(listed.length <= 3 ? [`${name}: ${listed.map((value) => volts(value, marks)).join(', ')}`] : []),
+    `${name}: ${volts(worst, marks)}`,
+  ];
+  return shorter.find((text) => text.length * LETTER_PX <= room) ?? name;
+}
+
 /** 'Pack of 96 groups: median 3.968 V, spread 102 mV, lowest G33 3.871 V, highest G90 3.973 V. Odd: …' */
 export function packTwin({
   groupVolts,

@@ -20,11 +20,14 @@ export function fitVerdict(
   const fit = log.filter(({ stage }) => stage === 'after-fit').at(-1);
   if (!fit || !expected) return null;
   const spread = fit.spreadMillivolts;
-  const said = `${millivolts(spread / 1000)} after the fit, ${Math.round(expected.low)}${EN_DASH}${millivolts(expected.high / 1000)} expected`;
+  const [low, high] = [Math.round(expected.low), Math.round(expected.high)];
+  const band = `${low === high ? '' : `${low}${EN_DASH}`}${millivolts(high / 1000)}`;
+  const said = `${millivolts(spread / 1000)} after the fit, ${band} expected`;
   if (spread > expected.high)
     return {
       good: false,
-      text: `Worse than forecast: ${said}. Check the module’s place and its leads before the lid is sealed.`,
+      // Once a balance charge was read the lid is on.
+      text: `Worse than forecast: ${said}.${log.at(-1) === fit ? ' Check the module’s place and its leads before the lid is sealed.' : ''}`,
     };
   return { good: true, text: `${spread < expected.low ? 'Better than forecast' : 'As forecast'}: ${said}.` };
 }

@@ -97,7 +97,7 @@ export function ReadingsPart({
       ) : null}
       {expected ? (
         <Txt kind="small" tone="ink2">
-          {`Expected after the fit: ${millivolts(expected.likely / 1000)} (${Math.round(expected.low)}–${Math.round(expected.high)} mV)${forecast?.charges ? `, then ${balanceWords(forecast.charges)}` : ''}.`}
+          {`Expected after the fit: ${millivolts(expected.likely / 1000)} (${bandWords(expected.low, expected.high)} mV)${forecast?.charges ? `, then ${balanceWords(forecast.charges)}` : ''}.`}
         </Txt>
       ) : null}
     </View>
@@ -107,5 +107,11 @@ export function ReadingsPart({
 /** '1 balance charge (1–2)' */
 export function balanceWords({ p10, p50, p90 }: NonNullable<NonNullable<RepairDto['forecast']>['charges']>): string {
   const likely = Math.round(p50);
-  return `${likely} balance ${likely === 1 ? 'charge' : 'charges'} (${Math.round(p10)}–${Math.round(p90)})`;
+  return `${likely} balance ${likely === 1 ? 'charge' : 'charges'} (${bandWords(p10, p90)})`;
+}
+
+/** '6–14'; rounded to one and the same: that one. */
+function bandWords(low: number, high: number): string {
+  const [from, to] = [Math.round(low), Math.round(high)];
+  return from === to ? String(to) : `${from}–${to}`;
 }

@@ -127,6 +127,6 @@ const useStyles = makeStyles(({ colors }) => ({
   names: { flexDirection: 'row', columnGap: 4 },
   name: { flexGrow: 1, flexShrink: 1, flexBasis: 0 },
   said: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'center', columnGap: 12 },
-  words: { flexDirection: 'row', alignItems: 'center', columnGap: 8, flexShrink: 1 },
+  words: { flexDirection: 'row', alignItems: 'center', columnGap: 8, flexShrink: 0 },
   aside: { flexShrink: 1 },
 }));

@@ -21,6 +21,17 @@ export default function RepairSpares() {
   const page = `/repairs/${id}`;
   const go = (to: string) => router.push(to as Href);
   const back = () => (router.canGoBack() ? router.back() : router.replace(page as Href));
+  if (gate.may && repair.data?.target)
+    return (
+      <ChooseSpare
+        key={id}
+        repair={repair.data}
+        target={repair.data.target}
+        onBack={back}
+        onGo={go}
+        onStock={() => go('/spares')}
+      />
+    );
   return (
     <Screen
       single
@@ -34,14 +45,6 @@ export default function RepairSpares() {
     >
       {!gate.may ? (
         <Forbidden what="Spares are reserved" roles={gate.roles} people={gate.people} />
-      ) : repair.data?.target ? (
-        <ChooseSpare
-          key={id}
-          repair={repair.data}
-          target={repair.data.target}
-          onPlan={go}
-          onStock={() => go('/spares')}
-        />
       ) : repair.data ? (
         <Empty
           sentence="No target yet. Spares are sorted by the time to it."

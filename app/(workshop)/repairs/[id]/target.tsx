@@ -22,6 +22,17 @@ export default function Target() {
   const go = (to: string) => router.replace(to as Href);
   const back = () => (router.canGoBack() ? router.back() : go(page));
   const read = () => go(`${page}/reading`);
+  if (gate.may && repair.data?.computed)
+    return (
+      <TakeTarget
+        key={id}
+        repair={repair.data}
+        computed={repair.data.computed}
+        onBack={back}
+        onRead={read}
+        onTaken={() => go(page)}
+      />
+    );
   return (
     <Screen
       single
@@ -35,14 +46,6 @@ export default function Target() {
     >
       {!gate.may ? (
         <Forbidden what="Targets are taken" roles={gate.roles} people={gate.people} />
-      ) : repair.data?.computed ? (
-        <TakeTarget
-          key={id}
-          repair={repair.data}
-          computed={repair.data.computed}
-          onRead={read}
-          onTaken={() => go(page)}
-        />
       ) : repair.data ? (
         <Empty
           sentence="No target yet: no reading with healthy groups is there."
