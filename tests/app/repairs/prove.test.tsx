@@ -36,7 +36,8 @@ it('shows 120, 40 and 28 mV in their order, 2 (1–4) charges to come and a fit 
   expect(await screen.findByText('2 (1–4)')).toBeTruthy();
   const rows = within(screen.getByRole('list', { name: 'Spread of each reading' })).getAllByText(/^\d+.mV$/);
   expect(rows.map(({ textContent }) => parseInt(textContent ?? '', 10))).toEqual([120, 40, 28]);
-  expect(screen.getByText(/^Worse than forecast: 40.mV after the fit, 20–30.mV expected/)).toBeTruthy();
+  // A balance charge was read since: the lid is on, and its module is out of reach.
+  expect(screen.getByText(/^Worse than forecast: 40.mV after the fit, 20–30.mV expected\.$/)).toBeTruthy();
   fireEvent.click(await press('Read the pack again'));
   expect(gone).toHaveBeenCalledWith('/repairs/r1/reading');
 });

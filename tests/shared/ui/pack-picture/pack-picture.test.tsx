@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { FormatsProvider } from '@/shared/ui/format/formats';
 import { layoutPack } from '@/shared/ui/pack-picture/layout';
 import { PackPicture } from '@/shared/ui/pack-picture/pack-picture';
-import { packTwin } from '@/shared/ui/pack-picture/words';
+import { fittingOddText, packTwin } from '@/shared/ui/pack-picture/words';
 
 const pairs = (count: number, per: number) => Array.from({ length: count }, (_, i) => String(Math.floor(i / per) + 1));
 /** 96 groups at 3.968 V but module 17. */
@@ -22,6 +22,16 @@ describe('the pack picture', () => {
     expect(low[1]!).toBeGreaterThan(higher[1]!);
     for (const [, y, , height] of [...boxes(healthy), ...boxes(odd)]) expect(y! + height!).toBeCloseTo(176, 1);
     expect(breakY).toBeLessThan(176);
+  });
+
+  it.each([
+    [340, 'Module 17: G33 3.871 V, G34 3.934 V'],
+    [240, 'Module 17: 3.871 V, 3.934 V'],
+    [150, 'Module 17: 3.871 V'],
+    [80, 'Module 17'],
+  ])('calls the module out in %i px with as much as they hold, its name in any case', (room, text) => {
+    const said = fittingOddText({ position: '17', groups: [32, 33] }, volts, 3.969, room);
+    expect(said.replaceAll('\u00a0', ' ')).toBe(text);
   });
 
   it('keeps 100 mV as many times 10 mV in px, so that bars compare', () => {
