@@ -81,7 +81,8 @@ export function StepStrip({ repair, deciders }: { repair: RepairDto; deciders: s
           ? 'Handed over, in the archive'
           : 'Handed over';
   const blocked = present?.state === 'blocked';
-  const aside = blocked ? (deciders ? `${deciders} must decide` : 'blocked') : thenWords(repair.steps);
+  const toCome = repair.state === 'open' ? thenWords(repair.steps) : '';
+  const aside = blocked ? (deciders ? `${deciders} must decide` : 'blocked') : toCome;
   const target = repair.target ? volts(repair.target.volts, marks) : null;
   return (
     <View role="group" aria-label={`Steps of the repair: ${said}`} style={styles.strip}>
