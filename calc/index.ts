@@ -39,7 +39,27 @@ export { learnedFactor, type ClosedCharge, type LearnedFactor } from './learn/le
 
 // The planner and the running charge.
 export { planCharge } from './plan/plan-charge';
+export { soonestTerminals, type SoonestTerminals } from './plan/soonest-terminals';
 export { withTimeFactor } from './plan/time-factor';
 export { judgeCheck } from './plan/judge-check';
 export { reckonCharge } from './live/reckon-charge';
 export { quickEstimate, type QuickEstimate, type QuickNumbers, type QuickWay } from './plan/estimate';
+
+// The pack: its readings, what they say, and what balancing will do.
+export { oddGroups, type GroupVolts, type OddGroups, type OddGroupsOptions } from './pack/odd-groups';
+export { packTarget, type PackTarget, type PackTargetInput } from './pack/pack-target';
+export { type TargetReason, type TargetTrust } from './pack/target-trust';
+export { readingAmpHours, type ReadingAmpHours, type ReadingAmpHoursInput } from './pack/reading-amp-hours';
+export { spareAgreement, type Agreement, type SpareAgreement, type SpareAgreementInput } from './pack/spare-agreement';
+export { bleedHours, type BleedHoursInput } from './pack/bleed-hours';
+export { type Likely, type PackReading, type PackStage } from './pack/pack-reading';
+export { classifyChange, type ChangeKind, type ChangeOptions, type PackChange } from './pack/classify-change';
+export { balanceForecast, type BalanceForecast, type BalanceForecastOptions } from './pack/balance-forecast';
+export { type BalanceSource } from './pack/balance-rate';
+export { type DoesNotConverge } from './pack/convergence';
+export {
+  compareSources,
+  type ComparedGroup,
+  type CompareSourcesInput,
+  type SourceComparison,
+} from './pack/compare-sources';

@@ -7,6 +7,7 @@ import { useLink } from '@/shared/client/link';
 import { startLive } from '@/shared/client/live';
 import { useNotices } from '@/shared/client/notices';
 import { useReadingQueueRunner, useWaitingReadingCount } from '@/shared/client/reading-queue';
+import { useNeedsSomebodyCount } from '@/shared/client/repairs';
 import { useCan, useSession } from '@/shared/client/session';
 import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
@@ -31,6 +32,7 @@ export default function WorkshopLayout() {
   const { colors } = useTheme();
   const name = useSession().data?.person.name ?? '';
   const alerts = useOpenAlertCount();
+  const repairs = useNeedsSomebodyCount();
   const seesWaits = useCan('waits:read');
   const notices = useNotices(useCallback((url: string) => router.navigate(url as Href), [router]));
 
@@ -45,13 +47,13 @@ export default function WorkshopLayout() {
     <AppFrame
       rail={
         <SideRail
-          items={railItems({ alerts, seesWaits })}
+          items={railItems({ alerts, repairs, seesWaits })}
           current={place.rail}
           onGo={go}
           person={{ key: 'more', title: name.split(' ')[0] || 'You', icon: 'person', href: '/more' }}
         />
       }
-      tabs={place.tab ? <TabBar items={tabItems({ alerts })} current={place.tab} onGo={go} /> : undefined}
+      tabs={place.tab ? <TabBar items={tabItems({ alerts, repairs })} current={place.tab} onGo={go} /> : undefined}
     >
       <ShellStrip.Provider value={<Strip />}>
         <Stack

@@ -13,6 +13,7 @@ import { fileOf, type Act, type BenchDay } from './bench-day';
 import { handMeterId } from './equipment';
 import { shown, type Noise } from './noise';
 import { demoPeople, memberOf, type DemoName } from './people';
+import { bookRepairOf } from './repairs';
 
 const MINUTE = 60_000;
 
@@ -61,7 +62,11 @@ export function dayActs(day: BenchDay, charge: string, by: DemoName, noise: Nois
   /** What the supply showed where something else was typed. */
   let meantVolts: number | null = null;
   return {
-    keep: (at, request) => act(at, async (now) => day.remember(charge, await keepPlan(deps, member, request, now))),
+    keep: (at, request) =>
+      act(at, async (now) => {
+        await bookRepairOf(deps, by, request, now);
+        day.remember(charge, await keepPlan(deps, member, request, now));
+      }),
     answer: (at, count = 7) =>
       act(at, async (now) => {
         const codes: CheckCode[] = ['isolation', 'polarity', 'condition', 'ceiling', 'ventilation', 'attendance'];

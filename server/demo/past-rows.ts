@@ -47,6 +47,7 @@ export function pastCharge(past: PastCharge, { number, repairRef }: PastNames): 
     repairRef,
     modulePosition: String(1 + (past.repair % 16)),
     spareId: pastSpareId(past),
+    repairId: null,
     neighbourSpareId: null,
     moduleTypeId: typeId(past.asked.type),
     personId: personId(past),

@@ -20,6 +20,7 @@ import { demoHours, demoZone } from './hours';
 import { liveOpenCharges } from './open-charges';
 import { writePast } from './past';
 import { demoPeople, invitedEmail, memberOf, type DemoPerson } from './people';
+import { letSourcesDisagree, proveOne, writePackTypes } from './repairs';
 import { writeStock } from './stock';
 import { pairWall } from './wall';
 
@@ -76,11 +77,14 @@ async function writeDemo(deps: Deps, now: number): Promise<void> {
   const count = await inTransaction(deps, async (manager) => {
     const equipment = await writeEquipment(manager, now, setUpAt);
     await writeStock(manager, now, setUpAt);
+    await writePackTypes(manager, setUpAt);
     const made = await writePast(manager, { workshop, equipment }, now);
     await manager.update(Workshop, { id: demoWorkshopId }, { chargeCount: made });
     return made;
   });
+  await proveOne(deps, now);
   await liveOpenCharges(deps, now);
+  await letSourcesDisagree(deps, now);
   await invite(
     deps,
     memberOf('petra'),

@@ -13,9 +13,17 @@ import { LevellingResistor } from './levelling-resistor';
 import { LookIn } from './look-in';
 import { Meter } from './meter';
 import { ModuleType } from './module-type';
+import { PackReading } from './pack-reading';
+import { PackType } from './pack-type';
 import { Person } from './person';
+import { RemovedModule } from './removed-module';
+import { Repair } from './repair';
+import { RepairEvent } from './repair-event';
+import { RepairPerson } from './repair-person';
+import { RepairWait } from './repair-wait';
 import { RestCheck } from './rest-check';
 import { RunStretch } from './run-stretch';
+import { SecondSource } from './second-source';
 import { Session } from './session';
 import { Spare } from './spare';
 import { SpareCapacity } from './spare-capacity';
@@ -36,6 +44,8 @@ export const entities = [
   Meter,
   Spare,
   SpareReading,
+  PackType,
+  Repair,
   Charge,
   SpareCapacity,
   ChannelHold,
@@ -46,6 +56,12 @@ export const entities = [
   RestCheck,
   LookIn,
   Alert,
+  RepairPerson,
+  PackReading,
+  SecondSource,
+  RemovedModule,
+  RepairWait,
+  RepairEvent,
   Wall,
   WallCode,
   IdempotencyKey,

@@ -31,6 +31,7 @@ import { Workshop } from './workshop';
 @Index('ix_charge_closed', ['workshopId', 'readyAt'])
 @Index('ix_charge_spare', ['workshopId', 'spareId'])
 @Index('ix_charge_neighbour', ['workshopId', 'neighbourSpareId'])
+@Index('ix_charge_repair', ['workshopId', 'repairId'])
 @Index('uq_charge_open_spare', ['spareId'], {
   unique: true,
   where: "stage IN ('planned','queued','charging','discharging','tapering','resting','check-due','ready','held')",
@@ -52,6 +53,10 @@ export class Charge {
 
   @Column(optionalTextColumn('repair_ref'))
   repairRef!: string | null;
+
+  /** The repair it belongs to; null: none that the workshop keeps here. No foreign key (see its migration). */
+  @Column(optionalIdColumn('repair_id'))
+  repairId!: string | null;
 
   @Column(optionalTextColumn('module_position'))
   modulePosition!: string | null;

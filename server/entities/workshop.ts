@@ -1,6 +1,14 @@
 import { Column, Entity, PrimaryColumn } from 'typeorm';
 import type { DayHours } from '@/shared/contract/workshop';
-import { idColumn, instantColumn, jsonColumn, realColumn, textColumn, wholeColumn } from './columns';
+import {
+  idColumn,
+  instantColumn,
+  jsonColumn,
+  optionalFlagColumn,
+  realColumn,
+  textColumn,
+  wholeColumn,
+} from './columns';
 
 /** A workshop: the tenant every other row belongs to, with its settings. */
 @Entity({ name: 'workshop' })
@@ -31,6 +39,10 @@ export class Workshop {
 
   @Column(realColumn('lag_limit_millivolts'))
   lagLimitMillivolts!: number;
+
+  /** A technician too decides where two sources disagree; null: as workshops begin, no. */
+  @Column(optionalFlagColumn('technician_decides'))
+  technicianDecides!: boolean | null;
 
   @Column(wholeColumn('board_rev'))
   boardRev!: number;

@@ -6,6 +6,7 @@ import { EarlyCheck1764900000000 } from './1764900000000-early-check';
 import { SpareCapacity1765000000000 } from './1765000000000-spare-capacity';
 import { Behaviours1765100000000 } from './1765100000000-behaviours';
 import { ReadingPlace1765200000000 } from './1765200000000-reading-place';
+import { Repairs1765300000000 } from './1765300000000-repairs';
 
 export const migrations = [
   Initial1764600000000,
@@ -15,4 +16,5 @@ export const migrations = [
   SpareCapacity1765000000000,
   Behaviours1765100000000,
   ReadingPlace1765200000000,
+  Repairs1765300000000,
 ];

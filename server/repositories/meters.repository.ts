@@ -2,7 +2,9 @@ import type { EntityManager } from 'typeorm';
 import { ChargeReading } from '../entities/charge-reading';
 import { Charge } from '../entities/charge';
 import { Meter } from '../entities/meter';
+import { PackReading } from '../entities/pack-reading';
 import { RestCheck } from '../entities/rest-check';
+import { SecondSource } from '../entities/second-source';
 import { SpareReading } from '../entities/spare-reading';
 
 export const listMeters = (manager: EntityManager, workshopId: string): Promise<Meter[]> =>
@@ -31,6 +33,8 @@ export async function countReadingsWithMeter(
     await manager.countBy(ChargeReading, { workshopId, meterId }),
     await manager.countBy(RestCheck, { workshopId, meterId }),
     await manager.countBy(Charge, { workshopId, targetMeterId: meterId }),
+    await manager.countBy(PackReading, { workshopId, meterId }),
+    await manager.countBy(SecondSource, { workshopId, meterId }),
   ];
   return counts.reduce((sum, count) => sum + count, 0);
 }

@@ -7,6 +7,7 @@ import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
 import { peopleRoutes } from './people.routes';
 import { plansRoutes } from './plans.routes';
+import { repairsRoutes } from './repairs.routes';
 import { sessionRoutes } from './session.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
@@ -22,6 +23,7 @@ export const routesModules: RoutesModule[] = [
   equipmentRoutes,
   stockRoutes,
   plansRoutes,
+  repairsRoutes,
   chargesRoutes,
   boardRoutes,
   alertsRoutes,

@@ -1,11 +1,12 @@
 import type { Request, Response, Router } from 'express';
-import { can, leastRoleWith } from '@/shared/contract/roles';
+import { leastRoleWith } from '@/shared/contract/roles';
 import type { Deps, Member } from '../deps';
 import { DomainError, forbidden, invalid } from '../errors/domain-error';
 import { fieldsOf } from '../errors/zod-fields';
 import { cookieOf } from '../middleware/cookies';
 import { addressKey } from '../services/limits';
 import { checkKey, once, type Answer } from '../services/idempotency.service';
+import { may } from '../services/may';
 import { memberOf, wallOf } from '../services/who-asks';
 import type { DeclaredHandler, Policy, RouteRegistrar, RouteSpec } from './define-route';
 import { revisionOf } from './if-match';
@@ -30,7 +31,7 @@ async function admit(deps: Deps, policy: Policy, request: Request, now: number):
   const found = await memberOf(deps, cookieOf(request, 'bidewell_access'), now);
   if (!found) throw signedOut();
   const { member } = found;
-  if (policy.kind === 'capability' && !can(member.role, policy.capability)) {
+  if (policy.kind === 'capability' && !(await may(deps.dataSource.manager, member, policy.capability))) {
     const least = leastRoleWith(policy.capability);
     request.log?.warn({ personId: member.personId, capability: policy.capability }, 'refused by role');
     throw forbidden(`This needs the role ${least}. You are signed in as ${member.role}.`);

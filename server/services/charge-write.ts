@@ -23,6 +23,8 @@ import { isWrongStage } from './charge-stage-conflict';
 import { progress, type Note } from './charge-progress';
 import { newId } from './ids';
 import { toInstant } from './instants';
+import { announceRepair } from './repair-write';
+import { followCharge, type RepairRev } from './repair-charges';
 import { refusingTaken } from './unique-taken';
 import { inTransaction } from './unit-of-work';
 import { lastChange, staleCharge, toldBy } from './who-changed';
@@ -49,6 +51,8 @@ export interface Announcement {
   /** Where the spare stands has changed; who holds which channel has. */
   stock: boolean;
   channels: boolean;
+  /** Its repair, which has followed it; null or left out: none. */
+  repair?: RepairRev | null;
   people: ChargeFile['people'];
 }
 
@@ -150,6 +154,7 @@ export async function settle(
     manager,
     [...notes, ...happened].map((note, place) => eventOf(charge, note, now + place)),
   );
+  const repair = await followCharge(manager, file, now, [...notes, ...happened]);
   const boardRev = await raiseBoardRev(manager, charge.workshopId);
   const stock = charge.stage !== storedStage;
   return {
@@ -159,6 +164,7 @@ export async function settle(
     alerts,
     people: file.people,
     stock,
+    repair,
     channels: channels || stock,
   };
 }
@@ -202,6 +208,7 @@ export function announce(deps: Pick<Deps, 'hub' | 'sleeper'>, done: Announcement
   const { workshopId, charge, alerts } = done;
   deps.hub.toWorkshop(workshopId, 'board:changed', { rev: done.boardRev, at, chargeId: charge.id });
   deps.hub.toWorkshop(workshopId, 'charge:changed', { id: charge.id, rev: charge.rev, at });
+  if (done.repair) announceRepair(deps, workshopId, done.repair, now);
   if (done.stock) deps.hub.toWorkshop(workshopId, 'stock:changed', { at });
   if (done.channels) deps.hub.toWorkshop(workshopId, 'equipment:changed', { at });
   for (const alert of alerts.raised)

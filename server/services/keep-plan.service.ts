@@ -21,6 +21,8 @@ import { clockText, durationText, titleOf } from './charge-words';
 import { announce, settle, type Announcement } from './charge-write';
 import { newId } from './ids';
 import { planFor, type PlanInputs } from './plan-inputs';
+import { giveToRepair, repairOfPlan } from './repair-charges';
+import { refuseReserved } from './repair-spares.service';
 import { refusingTaken } from './unique-taken';
 import { inTransaction } from './unit-of-work';
 import { lastChange, toldBy } from './who-changed';
@@ -39,10 +41,13 @@ export async function keepPlan(deps: Deps, member: Member, request: KeepPlanRequ
     const toppedUp = request.topUpOf ? await toppedUpFile(manager, member, request, request.topUpOf) : null;
     const replaced = request.insteadOf ? await replacedFile(manager, member, request, request.insteadOf, now) : null;
     await refuseTakenSpare(manager, member, request.spareId, toppedUp ?? replaced, now);
+    const repair = await repairOfPlan(manager, member.workshopId, request, (toppedUp ?? replaced)?.charge ?? null);
     const planned = await planFor(manager, member.workshopId, request, now);
+    await refuseReserved(manager, member.workshopId, planned.spare, repair?.repair.id ?? null);
     const option = optionOf(planned.dto, request.optionId);
     const number = `C-${String(await nextChargeNumber(manager, member.workshopId)).padStart(4, '0')}`;
     const charge = chargeRow(member, request, planned, option, number, now);
+    if (repair !== null) await giveToRepair(manager, member, charge, repair, Boolean(request.repairId), now);
     if (toppedUp !== null) done.push(await closeForTopUp(manager, member, toppedUp, number, now));
     // What was to be topped up is still what this one goes on from.
     charge.topUpOf ??= replaced?.charge.topUpOf ?? null;
@@ -149,6 +154,7 @@ function chargeRow(
     workshopId: member.workshopId,
     number,
     repairRef: request.repairRef,
+    repairId: null,
     modulePosition: request.modulePosition,
     spareId: spare.id,
     neighbourSpareId: option.way === 'resistor' ? planned.neighbourSpareId : null,

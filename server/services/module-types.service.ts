@@ -12,6 +12,7 @@ import {
   listModuleTypes,
   saveModuleType,
 } from '../repositories/module-types.repository';
+import { countPacksOfModuleType } from '../repositories/pack-types.repository';
 import { announceEquipment } from './announce';
 import { newId } from './ids';
 import { nothingMore } from './module-type-defaults';
@@ -74,6 +75,10 @@ export async function changeModuleType(
       throw invalid({
         groupsInSeries: `The readings of this type’s spares have ${type.groupsInSeries} groups. Add a new type for another number.`,
       });
+    if (input.groupsInSeries !== type.groupsInSeries && (await countPacksOfModuleType(manager, workshopId, id)) > 0)
+      throw invalid({
+        groupsInSeries: `Packs have modules of this type with ${type.groupsInSeries} groups. Add a new type for another number.`,
+      });
     const changed = Object.assign(type, given(input), { rev: rev + 1 });
     refuseMisfits(changed);
     await saveModuleType(manager, changed);
@@ -94,6 +99,13 @@ export async function removeModuleType(
   await inTransaction(deps, async (manager) => {
     const present = await dtoOf(manager, member.workshopId, id);
     if (present.rev !== rev) throw stale(present);
+    const packs = await countPacksOfModuleType(manager, member.workshopId, id);
+    if (packs > 0 && present.spareCount + present.chargeCount === 0)
+      throw conflict(
+        'type_in_use',
+        `${present.name} stands in ${counted(packs, 'pack')}. A type in use cannot be removed.`,
+        present,
+      );
     if (present.spareCount + present.chargeCount > 0)
       throw conflict(
         'type_in_use',

@@ -36,13 +36,13 @@ import {
 import { closesInSeconds } from './working-hours';
 
 /** The shop's temperature where nobody has read the module's, °C. A guess. */
-const ROOM_CELSIUS = 20;
+export const ROOM_CELSIUS = 20;
 
 /**
  * One set of draws for every plan: two plans then differ by their numbers alone, not by their dice, and the same spare
  * with the same reading gives the same band to the last digit, whoever plans and when.
  */
-const PLAN_SEED = 20_260_609;
+export const PLAN_SEED = 20_260_609;
 
 export interface PlanInputs {
   input: PlanInput;
@@ -219,10 +219,14 @@ function packMeterOf(request: PlanRequest, meters: ReadonlyMap<string, Meter>): 
   return meter;
 }
 
-async function channelsFor(
+/**
+ * The channels that a plan may use, each from when it is free; those of the spare's own charge count as free.
+ * @param spare whose plan it is; an id of none where it is about a whole type
+ */
+export async function channelsFor(
   manager: EntityManager,
   workshopId: string,
-  spare: Spare,
+  spare: Pick<Spare, 'id' | 'moduleTypeId'>,
   withoutLearned: boolean,
   meters: ReadonlyMap<string, Meter>,
   now: number,

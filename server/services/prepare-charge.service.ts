@@ -15,6 +15,8 @@ import { bare, clockText, lowerFirst, titleOf } from './charge-words';
 import { changeCharge } from './charge-write';
 import { newId } from './ids';
 import { fromInstant, toInstant } from './instants';
+import { followDrop } from './repair-charges';
+import { announceRepair } from './repair-write';
 import { inTransaction } from './unit-of-work';
 import { lastChange, staleCharge, toldBy } from './who-changed';
 
@@ -130,7 +132,7 @@ function waitingFrom(option: PlanOption, laterS: number): PlanOption {
  */
 export async function dropCharge(deps: Deps, member: Member, id: string, rev: number, now: number): Promise<void> {
   const { workshopId } = member;
-  const boardRev = await inTransaction(deps, async (manager) => {
+  const { boardRev, repair } = await inTransaction(deps, async (manager) => {
     const file = await loadFile(manager, workshopId, id);
     const { charge } = file;
     const last = await lastChange(manager, file, member, now);
@@ -140,10 +142,12 @@ export async function dropCharge(deps: Deps, member: Member, id: string, rev: nu
       throw toldBy(conflict('wrong_stage', begun, chargeCard(file, now)), last);
     }
     await deleteCharge(manager, workshopId, id);
-    return raiseBoardRev(manager, workshopId);
+    const followed = await followDrop(manager, member, file, now);
+    return { boardRev: await raiseBoardRev(manager, workshopId), repair: followed };
   });
   const at = toInstant(now);
   deps.hub.toWorkshop(workshopId, 'board:changed', { rev: boardRev, at, chargeId: id });
+  if (repair) announceRepair(deps, workshopId, repair, now);
   deps.hub.toWorkshop(workshopId, 'stock:changed', { at });
   deps.hub.toWorkshop(workshopId, 'equipment:changed', { at });
   deps.sleeper.poke();

@@ -1,5 +1,5 @@
 import type { EntityManager } from 'typeorm';
-import { roleCapabilities } from '@/shared/contract/roles';
+import { capabilitiesIn } from '@/shared/contract/roles';
 import type { ActiveSessionDto, SessionDto } from '@/shared/contract/session';
 import type { Deps, Member } from '../deps';
 import type { Person } from '../entities/person';
@@ -39,7 +39,7 @@ export interface SignedIn {
 export const sessionDto = (person: Person, workshop: Workshop, expiresAt: number): SessionDto => ({
   person: { id: person.id, name: person.name, email: person.email, role: person.role },
   workshop: { id: workshop.id, name: workshop.name, zone: workshop.zone },
-  capabilities: roleCapabilities[person.role],
+  capabilities: capabilitiesIn(person.role, workshop),
   expiresAt: toInstant(expiresAt),
 });
 

@@ -4,6 +4,8 @@ import { conflict } from '../errors/domain-error';
 const sentences: [column: string, code: string, text: string][] = [
   ['channel_hold.channel_id', 'channel_taken', 'This channel was taken a moment ago. Look at the board and try again.'],
   ['charge.spare_id', 'spare_taken', 'This spare was put on another charge a moment ago. Take another spare.'],
+  ['repair.spare_id', 'spare_reserved', 'This spare was reserved for another repair a moment ago. Take another spare.'],
+  ['repair.workshop_id', 'name_taken', 'This number was given to another repair a moment ago. Try again.'],
   ['run_stretch.charge_id', 'wrong_stage', 'This charge was begun a moment ago. Look at it again.'],
 ];
 

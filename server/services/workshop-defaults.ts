@@ -1,7 +1,7 @@
 import type { WorkshopSettings } from '@/shared/contract/workshop';
 
 /** Settings a new workshop begins with; all of them can be changed on its settings page. */
-export const defaultSettings = (name: string, zone: string): WorkshopSettings => ({
+export const defaultSettings = (name: string, zone: string): Required<WorkshopSettings> => ({
   name,
   zone,
   workingHours: [
@@ -14,4 +14,5 @@ export const defaultSettings = (name: string, zone: string): WorkshopSettings =>
   lookInMinutes: 60,
   inrushLimitC: 1,
   lagLimitMillivolts: 20,
+  technicianDecides: false,
 });

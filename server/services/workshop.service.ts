@@ -16,6 +16,7 @@ const workshopDto = (workshop: Workshop): WorkshopDto => ({
   lookInMinutes: workshop.lookInMinutes,
   inrushLimitC: workshop.inrushLimitC,
   lagLimitMillivolts: workshop.lagLimitMillivolts,
+  technicianDecides: workshop.technicianDecides === true,
   rev: workshop.rev,
 });
 

@@ -19,6 +19,9 @@ export const liveRoots: readonly Root[] = [
   roots.board,
   roots.charges,
   roots.charge,
+  roots.repairs,
+  roots.repair,
+  roots.packTypes,
   roots.alerts,
   roots.spares,
   roots.spare,
@@ -57,12 +60,16 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
       if (known === null || known < event.rev) old(roots.charge, event.id);
       old(roots.charges);
     },
+    'repair:changed': (event) => {
+      old(roots.repairs);
+      old(roots.repair, event.id);
+    },
     'stock:changed': () => {
       old(roots.spares);
       old(roots.spare);
     },
     'equipment:changed': () => {
-      for (const root of [roots.moduleTypes, roots.chargers, roots.resistors, roots.meters]) old(root);
+      for (const root of [roots.moduleTypes, roots.packTypes, roots.chargers, roots.resistors, roots.meters]) old(root);
       old(roots.board);
       old(roots.spares);
     },

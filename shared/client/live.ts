@@ -21,6 +21,7 @@ type LiveSocket = Socket<ServerToClientEvents, ClientToServerEvents>;
 const names = [
   'board:changed',
   'charge:changed',
+  'repair:changed',
   'stock:changed',
   'equipment:changed',
   'people:changed',

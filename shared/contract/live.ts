@@ -5,6 +5,7 @@ import type { Instant } from './common';
 export interface ServerToClientEvents {
   'board:changed': (event: { rev: number; at: Instant; chargeId: string | null }) => void;
   'charge:changed': (event: { id: string; rev: number; at: Instant }) => void;
+  'repair:changed': (event: { id: string; rev: number; at: Instant }) => void;
   'stock:changed': (event: { at: Instant }) => void;
   'equipment:changed': (event: { at: Instant }) => void;
   'people:changed': (event: { at: Instant }) => void;

@@ -80,6 +80,8 @@ export const keepPlanSchema = z
     topUpOf: z.optional(z.nullable(id)),
     /** The charge of the same spare, not begun, that this one is planned in place of: it is dropped. */
     insteadOf: z.optional(z.nullable(id)),
+    /** The repair it is for: its number and failing module stand for `repairRef` and `modulePosition`, its people get it. */
+    repairId: z.optional(z.nullable(id)),
   })
   .check(z.refine(isTargetGiven, noTarget), z.refine(isTargetOne, twoTargets));
 export type KeepPlanRequest = z.infer<typeof keepPlanSchema>;

@@ -14,6 +14,10 @@ export const capabilities = [
   'charge:run',
   'charge:correct-any',
   'charge:assign',
+  'repair:read',
+  'repair:write',
+  'repair:decide',
+  'repair:delete',
   'alert:take',
   'wall:approve',
   'wall:revoke',
@@ -32,6 +36,8 @@ const technician: Capability[] = [
   'equipment:read',
   'charge:plan',
   'charge:run',
+  'repair:read',
+  'repair:write',
   'alert:take',
   'people:read',
 ];
@@ -40,16 +46,28 @@ const foreman: Capability[] = [
   'spare:release',
   'charge:correct-any',
   'charge:assign',
+  'repair:decide',
   'wall:approve',
   'wall:revoke',
   'waits:read',
 ];
-const manager: Capability[] = [...foreman, 'equipment:write', 'people:write', 'workshop:write'];
+const manager: Capability[] = [...foreman, 'repair:delete', 'equipment:write', 'people:write', 'workshop:write'];
 
 export const roleCapabilities: Record<Role, readonly Capability[]> = { technician, foreman, manager };
 
 /** True where the role holds the capability. */
 export const can = (role: Role, capability: Capability): boolean => roleCapabilities[role].includes(capability);
+
+/** Settings of a workshop that give a role more. */
+export interface RoleSettings {
+  technicianDecides?: boolean | null;
+}
+
+/** The capabilities of a role in a workshop: those of the role, and what the workshop's settings add. */
+export const capabilitiesIn = (role: Role, settings: RoleSettings): readonly Capability[] =>
+  settings.technicianDecides === true && !can(role, 'repair:decide')
+    ? [...roleCapabilities[role], 'repair:decide']
+    : roleCapabilities[role];
 
 /** The least role that holds a capability, for the sentence on a forbidden screen. */
 export const leastRoleWith = (capability: Capability): Role => roles.find((role) => can(role, capability)) ?? 'manager';

@@ -21,6 +21,8 @@ export const workshopSettingsSchema = z.object({
   lookInMinutes: quantity({ name: 'Look-in interval', unit: 'min', min: 5, max: 480, whole: true }),
   inrushLimitC: quantity({ name: 'Inrush limit', unit: 'C', min: 0.05, max: 10 }),
   lagLimitMillivolts: quantity({ name: 'Lag limit', unit: 'mV', min: 1, max: 200 }),
+  /** A technician too decides where the pack and the hand meter point to different modules. Left out: no. */
+  technicianDecides: z.optional(z.boolean()),
 });
 /** What is left out stays as it is. */
 export const changeWorkshopSchema = z.partial(workshopSettingsSchema);

@@ -1,9 +1,10 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import type { RepairListDto } from '@/shared/contract/repair';
 import { roles, type Role } from '@/shared/contract/roles';
 import { describeInBrowser, seriousFindings, shot, type Visitor } from '../support/browser';
 import { drawn, member, openHouse, overflow, slowTest, type House, type ScreenSize } from './house';
 
-/** Every address of the workshop; those of charges by the demo's repairs, one in each stage. */
+/** Every address of the workshop; those of charges and repairs by the repair's number, one in each stage and step. */
 const screens = [
   '/bench',
   '/plan',
@@ -22,6 +23,19 @@ const screens = [
   '/charges/R-2418',
   '/charges/R-2418/checks',
   '/charges/no-such-charge',
+  '/repairs',
+  '/repairs/new',
+  '/repairs/R-2418',
+  '/repairs/R-2418/edit',
+  '/repairs/R-2418/reading',
+  '/repairs/R-2418/second-source',
+  '/repairs/R-2418/target',
+  '/repairs/R-2418/spares',
+  '/repairs/R-2423',
+  '/repairs/R-2423/second-source',
+  '/repairs/R-proven',
+  '/repairs/R-proven/prove',
+  '/repairs/no-such-repair',
   '/spares',
   '/spares/new',
   '/spares/demo-spare-S-0422',
@@ -31,7 +45,7 @@ const screens = [
   '/alerts',
   '/waits',
   '/workshop',
-  ...['people', 'chargers', 'module-types', 'meters', 'resistors', 'limits', 'hours', 'walls'].map(
+  ...['people', 'chargers', 'module-types', 'pack-types', 'meters', 'resistors', 'limits', 'hours', 'walls'].map(
     (section) => `/workshop?section=${section}`,
   ),
   '/workshop/people/demo-bram',
@@ -39,6 +53,8 @@ const screens = [
   '/workshop/chargers/demo-charger-C2',
   '/workshop/module-types/new',
   '/workshop/module-types/demo-type-six',
+  '/workshop/pack-types/new',
+  '/workshop/pack-types/demo-pack-two',
   '/workshop/meters/new',
   '/workshop/meters/demo-meter-hand-1',
   '/workshop/resistors/new',
@@ -53,16 +69,28 @@ const screens = [
 
 /** What a foreman or a technician sees otherwise than a manager, who is shown all: what the role opens, locks or hides. */
 const ofRole: Record<Exclude<Role, 'manager'>, readonly (typeof screens)[number][]> = {
-  foreman: ['/bench', '/spares/demo-spare-S-0391', '/waits', '/workshop', '/workshop/people/demo-bram', '/approve'],
+  foreman: [
+    '/bench',
+    '/repairs/R-2423/second-source',
+    '/spares/demo-spare-S-0391',
+    '/waits',
+    '/workshop',
+    '/workshop/people/demo-bram',
+    '/approve',
+  ],
   technician: [
     '/bench',
     '/charges/R-2411',
+    '/repairs',
+    '/repairs/R-2423',
+    '/repairs/R-2423/second-source',
     '/spares/demo-spare-S-0391',
     '/waits',
     '/workshop',
     '/workshop?section=walls',
     '/workshop/people/demo-bram',
     '/workshop/chargers/demo-charger-C2',
+    '/workshop/pack-types/demo-pack-two',
     '/workshop/limits',
     '/approve',
     '/more',
@@ -73,6 +101,8 @@ describeInBrowser('every screen', () => {
   let house: House;
   /** Ids by repair. */
   let charges: Record<string, string>;
+  /** Ids by number, that of the one being proven by 'R-proven'. */
+  let repairs: Record<string, string>;
   /** What axe has looked at: the same screen for another role is not looked at twice. */
   const judged = new Set<string>();
 
@@ -83,6 +113,12 @@ describeInBrowser('every screen', () => {
       charges: { id: string; title: string }[];
     };
     charges = Object.fromEntries(board.charges.map(({ id, title }) => [title, id]));
+    const listed = (await (
+      await reader.context.request.get(`${house.server.url}/api/repairs`)
+    ).json()) as RepairListDto;
+    repairs = Object.fromEntries(
+      listed.repairs.map(({ id, number, step }) => [step === 'prove' ? 'R-proven' : number, id]),
+    );
     await reader.close();
   });
   afterAll(() => house?.close());
@@ -109,7 +145,8 @@ describeInBrowser('every screen', () => {
   });
 
   async function look({ page, problems }: Visitor, screen: string, role: Role, size: ScreenSize): Promise<string[]> {
-    await page.goto(screen.replace(/R-\d+/, (repair) => charges[repair] ?? repair));
+    const ids = screen.startsWith('/repairs') ? repairs : charges;
+    await page.goto(screen.replace(/R-\w+/, (repair) => ids[repair] ?? repair));
     await drawn(page);
     const name = `every-${size}-${role}${screen.replace(/[^\w-]+/g, '-')}`;
     await shot(page, name);

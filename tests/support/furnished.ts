@@ -9,6 +9,7 @@ import type { PlanDto } from '@/shared/contract/plan';
 import type { SpareDto } from '@/shared/contract/spare';
 import type { WallCodeDto, WallDto } from '@/shared/contract/wall';
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from './forms';
+import { addRepairs, type Repaired } from './repaired';
 import { created } from './stocked';
 import type { TestAgent, TestServer, TestWorkshop } from './server';
 
@@ -34,6 +35,9 @@ export interface Furnished {
   spareId: string;
   optionId: string;
   alertId: string;
+  /** A spare reserved for a repair. */
+  reservedSpareId: string;
+  repairs: Repaired;
   /** A capacity of the spare on the shelf that waits for an answer. */
   capacityId: string;
   invitationId: string;
@@ -61,6 +65,8 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.spareId,
   furnished.alertId,
   furnished.capacityId,
+  furnished.reservedSpareId,
+  ...Object.values(furnished.repairs).filter((id) => typeof id === 'string'),
   furnished.invitationId,
   furnished.wallId,
 ];
@@ -132,12 +138,14 @@ async function begin(server: TestServer, name: 'own' | 'other') {
   const rested = await addSpare('S-0');
   const charged = await addSpare('S-1');
   const spare = await addSpare('S-2');
+  const reserved = await addSpare('S-3');
   const [first, second] = charger.channels.map(({ id }) => id);
   const charge = await startCharge(server, technician, rested.id, first ?? '');
   return {
     ...{ name, workshop, technician, manager, channelId: second ?? '' },
     ...{ typeId: type.id, spareTypeId: unused.id, meterId: meter.id, resistorId: resistor.id, chargerId: charger.id },
     ...{ chargedSpareId: charged.id, spareId: spare.id, restedId: charge.id },
+    ...{ reservedSpareId: reserved.id },
   };
 }
 
@@ -186,6 +194,16 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     personId: workshop.people.technician.id,
   };
   await server.deps.dataSource.manager.insert(SpareCapacity, capacity);
+  const repairs = await addRepairs(
+    { technician, manager },
+    {
+      name,
+      typeId: ids.typeId,
+      meterId: ids.meterId,
+      personId: workshop.people.technician.id,
+      spareId: ids.reservedSpareId,
+    },
+  );
   const { url } = await bodyOf<OneUseLinkDto>(
     manager.post('/api/invitations', { email: `nell@${name}.example.com`, role: 'technician' }),
     201,
@@ -202,6 +220,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     optionId: plan.options[0]?.id ?? '',
     alertId: alert.id,
     capacityId: capacity.id,
+    repairs,
     invitationId: invitation?.id ?? '',
     invitationToken: new URL(url).searchParams.get('token') ?? '',
     ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),

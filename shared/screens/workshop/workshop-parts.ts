@@ -5,6 +5,7 @@ import { HoursPart } from './hours-part';
 import { LimitsPart } from './limits-part';
 import { MetersPart } from './meters-part';
 import { ModuleTypesPart } from './module-types-part';
+import { PackTypesPart } from './pack-types-part';
 import type { PartProps } from './part-props';
 import { PeoplePart } from './people-part';
 import { ResistorsPart } from './resistors-part';
@@ -15,6 +16,7 @@ export const workshopParts: Record<SectionKey, (props: PartProps) => ReactNode> 
   people: PeoplePart,
   chargers: ChargersPart,
   'module-types': ModuleTypesPart,
+  'pack-types': PackTypesPart,
   meters: MetersPart,
   resistors: ResistorsPart,
   limits: LimitsPart,

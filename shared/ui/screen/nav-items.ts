@@ -6,8 +6,10 @@ export interface NavItem {
   title: string;
   icon: IconName;
   href: string;
-  /** Open alerts: a badge, and 'Alerts, 2' for readers. */
+  /** A badge; readers hear what is counted: 'Alerts, 2 open'. */
   count?: number;
+  /** What the count is of, after it: 'open', 'need somebody'. Left out: 'open'. */
+  counted?: string;
 }
 
 export interface NavProps {
@@ -17,4 +19,5 @@ export interface NavProps {
 }
 
 /** What a screen reader hears of an item. */
-export const navLabel = ({ title, count }: NavItem): string => (count ? `${title}, ${count} open` : title);
+export const navLabel = ({ title, count, counted = 'open' }: NavItem): string =>
+  count ? `${title}, ${count} ${counted}` : title;

@@ -3,13 +3,14 @@ import type { NavItem } from '../screen/nav-items';
 
 export interface Place {
   /** Key in the bottom bar; null inside a task, whose foot replaces the bar. */
-  tab: 'bench' | 'spares' | 'alerts' | 'more' | null;
-  rail: 'bench' | 'spares' | 'alerts' | 'waits' | 'workshop' | 'more';
+  tab: 'bench' | 'repairs' | 'spares' | 'alerts' | 'more' | null;
+  rail: 'bench' | 'repairs' | 'spares' | 'alerts' | 'waits' | 'workshop' | 'more';
 }
 
 /** Screens that show the bottom bar. Everything else is a task with Back at its head and its next step at its foot. */
 const tabs: Readonly<Record<string, Place['tab']>> = {
   '/bench': 'bench',
+  '/repairs': 'repairs',
   '/spares': 'spares',
   '/alerts': 'alerts',
   '/more': 'more',
@@ -22,13 +23,21 @@ export function placeOf(path: string): Place {
   const bare = path.replace(/\/+$/, '') || '/';
   const first = bare.split('/')[1] ?? '';
   const rail =
-    (['spares', 'alerts', 'waits', 'workshop', 'more'] as const).find(
+    (['repairs', 'spares', 'alerts', 'waits', 'workshop', 'more'] as const).find(
       (key) => key === (first === 'me' ? 'more' : first),
     ) ?? 'bench';
   return { tab: tabs[bare] ?? null, rail };
 }
 
 const bench: NavItem = { key: 'bench', title: 'Bench', icon: 'bench', href: '/bench' };
+const repairsWith = (count: number): NavItem => ({
+  key: 'repairs',
+  title: 'Repairs',
+  icon: 'repairs',
+  href: '/repairs',
+  count,
+  counted: count === 1 ? 'needs somebody' : 'need somebody',
+});
 const spares: NavItem = { key: 'spares', title: 'Spares', icon: 'spares', href: '/spares' };
 const alertsWith = (count: number): NavItem => ({
   key: 'alerts',
@@ -38,17 +47,25 @@ const alertsWith = (count: number): NavItem => ({
   count,
 });
 
+/** What is counted at the places: open alerts, and repairs that need somebody. */
+export interface PlaceCounts {
+  alerts: number;
+  repairs: number;
+}
+
 /** The phone's places. */
-export const tabItems = ({ alerts }: { alerts: number }): NavItem[] => [
+export const tabItems = ({ alerts, repairs }: PlaceCounts): NavItem[] => [
   bench,
+  repairsWith(repairs),
   spares,
   alertsWith(alerts),
   { key: 'more', title: 'More', icon: 'more', href: '/more' },
 ];
 
 /** The places of tablet and desk; the waits only for those who may read them. */
-export const railItems = ({ alerts, seesWaits }: { alerts: number; seesWaits: boolean }): NavItem[] => [
+export const railItems = ({ alerts, repairs, seesWaits }: PlaceCounts & { seesWaits: boolean }): NavItem[] => [
   bench,
+  repairsWith(repairs),
   spares,
   alertsWith(alerts),
   ...(seesWaits ? ([{ key: 'waits', title: 'Waits', icon: 'waits', href: '/waits' }] satisfies NavItem[]) : []),
@@ -70,6 +87,16 @@ const titles: Readonly<Record<string, string>> = {
   me: 'Name and password',
   alerts: 'Alerts',
   waits: 'Waits',
+  'repairs/index': 'Repairs',
+  'repairs/new': 'Start a repair',
+  'repairs/[id]': 'Repair',
+  'repairs/[id]/index': 'Repair',
+  'repairs/[id]/edit': 'Change a repair',
+  'repairs/[id]/reading': 'Read a pack',
+  'repairs/[id]/second-source': 'Second source',
+  'repairs/[id]/target': 'Target',
+  'repairs/[id]/spares': 'Choose a spare',
+  'repairs/[id]/prove': 'Prove a repair',
   'spares/index': 'Spares',
   'spares/new': 'New spare',
   'spares/[id]': 'Spare',
@@ -82,6 +109,7 @@ const titles: Readonly<Record<string, string>> = {
   'workshop/people/[id]': 'Person',
   'workshop/chargers/[id]': 'Charger',
   'workshop/module-types/[id]': 'Module type',
+  'workshop/pack-types/[id]': 'Pack type',
   'workshop/meters/[id]': 'Meter',
   'workshop/resistors/[id]': 'Levelling resistor',
   'charges/[id]/index': 'Charge',

@@ -3,6 +3,7 @@ export const sections = [
   { key: 'people', title: 'People', meaning: 'Roles, invitations, links for a new password' },
   { key: 'chargers', title: 'Chargers', meaning: 'Channels, what they give, who holds them now' },
   { key: 'module-types', title: 'Module types', meaning: 'Chemistry, limits of the maker, resistance' },
+  { key: 'pack-types', title: 'Pack types', meaning: 'Groups, modules, and which group sits where' },
   { key: 'meters', title: 'Meters', meaning: 'Offset and last cross-check' },
   { key: 'resistors', title: 'Levelling resistors', meaning: 'For pre-levelling and neighbours' },
   { key: 'limits', title: 'Limits', meaning: 'Tolerance, rest, look-ins, inrush' },

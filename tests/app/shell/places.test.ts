@@ -1,11 +1,13 @@
 import fs from 'node:fs';
 import { describe, expect, it } from 'vitest';
+import { navLabel } from '@/shared/ui/screen/nav-items';
 import { placeOf, railItems, tabItems, titleOf } from '@/shared/ui/shell/places';
 
 describe('places', () => {
-  it('of the phone are four, with the open alerts counted', () => {
-    expect(tabItems({ alerts: 2 }).map(({ title, count }) => `${title} ${count ?? ''}`.trim())).toEqual([
+  it('of the phone are five, with the open alerts and the repairs that need somebody counted', () => {
+    expect(tabItems({ alerts: 2, repairs: 3 }).map(({ title, count }) => `${title} ${count ?? ''}`.trim())).toEqual([
       'Bench',
+      'Repairs 3',
       'Spares',
       'Alerts 2',
       'More',
@@ -13,13 +15,21 @@ describe('places', () => {
   });
 
   it('of the desk hold the waits only for those who may read them', () => {
-    const keys = (seesWaits: boolean) => railItems({ alerts: 0, seesWaits }).map(({ key }) => key);
-    expect(keys(true)).toEqual(['bench', 'spares', 'alerts', 'waits', 'workshop']);
-    expect(keys(false)).toEqual(['bench', 'spares', 'alerts', 'workshop']);
+    const keys = (seesWaits: boolean) => railItems({ alerts: 0, repairs: 0, seesWaits }).map(({ key }) => key);
+    expect(keys(true)).toEqual(['bench', 'repairs', 'spares', 'alerts', 'waits', 'workshop']);
+    expect(keys(false)).toEqual(['bench', 'repairs', 'spares', 'alerts', 'workshop']);
+  });
+
+  it('tell a reader what is counted: 1 that needs, 3 that need somebody, 2 open alerts', () => {
+    const heard = (repairs: number) => tabItems({ alerts: 2, repairs }).map(navLabel);
+    expect(heard(3)).toEqual(['Bench', 'Repairs, 3 need somebody', 'Spares', 'Alerts, 2 open', 'More']);
+    expect(heard(1)[1]).toBe('Repairs, 1 needs somebody');
+    expect(heard(0)[1]).toBe('Repairs');
   });
 
   it.each([
     ['/bench', 'bench', 'bench'],
+    ['/repairs', 'repairs', 'repairs'],
     ['/spares', 'spares', 'spares'],
     ['/more', 'more', 'more'],
     ['/waits', 'more', 'waits'],
@@ -32,6 +42,8 @@ describe('places', () => {
     ['/plan', 'bench'],
     ['/charges/c1', 'bench'],
     ['/charges/c1/checks', 'bench'],
+    ['/repairs/r1', 'repairs'],
+    ['/repairs/r1/reading', 'repairs'],
     ['/spares/s1', 'spares'],
     ['/spares/new', 'spares'],
     ['/workshop/module-types', 'workshop'],

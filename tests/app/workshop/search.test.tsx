@@ -68,6 +68,27 @@ const parts = [
     'Meter 9',
   ],
   [
+    'Pack types',
+    'pack-types',
+    (n: number) => ({
+      id: `k${n}`,
+      name: `Pack ${n}`,
+      note: null,
+      pack: {
+        moduleTypeId: null,
+        groupCount: 96,
+        groupsPerModule: 2,
+        positionOfGroup: null,
+        moduleTypeName: null,
+        moduleCount: 48,
+      },
+      rev: 1,
+    }),
+    'Name or module type',
+    'pack 9',
+    'Pack 9',
+  ],
+  [
     'Levelling resistors',
     'resistors',
     (n: number) => ({ id: `r${n}`, name: `Resistor ${n}`, ohm: 1, maxWatts: 50, rev: 1 }),

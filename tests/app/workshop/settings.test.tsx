@@ -22,7 +22,7 @@ function open(role: Role, width: 'phone' | 'wide', section?: string, answers: ty
   state.params = section ? { section } : {};
   state.width = width;
   server = fakeServer(role);
-  for (const path of ['chargers', 'meters', 'module-types', 'resistors', 'walls', 'invitations'])
+  for (const path of ['chargers', 'meters', 'module-types', 'pack-types', 'resistors', 'walls', 'invitations'])
     server.answers[`GET /api/${path}`] = () => Response.json([]);
   Object.assign(server.answers, answers);
   draw(<Workshop />);
@@ -39,20 +39,21 @@ beforeEach(() => {
 afterEach(() => vi.unstubAllGlobals());
 
 describe('the settings of the workshop', () => {
-  it('are eight rows on the phone, each a way to its part', async () => {
+  it('are nine rows on the phone, each a way to its part', async () => {
     open('manager', 'phone');
     fireEvent.click(await screen.findByText('Levelling resistors'));
     expect(router.push).toHaveBeenCalledWith('/workshop?section=resistors');
     expect(screen.queryByRole('region')).toBeNull();
   });
 
-  it('are eight parts on the desk; the walls stand last, at the side of those who approve them', async () => {
+  it('are nine parts on the desk; the walls stand last, at the side of those who approve them', async () => {
     open('manager', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(8));
+    await waitFor(() => expect(parts()).toHaveLength(9));
     expect(parts()).toEqual([
       'People and roles',
       'Chargers and channels',
       'Module types',
+      'Pack types',
       'Meters',
       'Levelling resistors',
       'Limits',
@@ -65,7 +66,7 @@ describe('the settings of the workshop', () => {
 
   it('can be read by a technician, with who may change them in place of the ways to do so', async () => {
     open('technician', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(8));
+    await waitFor(() => expect(parts()).toHaveLength(9));
     expect(await screen.findByText('No charger yet. Nothing can be planned without one.')).toBeTruthy();
     expect(screen.queryByText('add a charger')).toBeNull();
     expect(screen.queryByRole('button', { name: 'Make the invitation' })).toBeNull();

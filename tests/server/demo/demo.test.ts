@@ -3,7 +3,6 @@ import os from 'node:os';
 import path from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { demoWorkshopId } from '@/server/demo/demo-workshop';
-import { demoHours, demoZone } from '@/server/demo/hours';
 import { passwordsFile, seedDemo } from '@/server/demo/seed';
 import { Charge } from '@/server/entities/charge';
 import { ChannelHold } from '@/server/entities/channel-hold';
@@ -14,6 +13,7 @@ import type { BoardDto } from '@/shared/contract/board';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { ChargerDto, ModuleTypeDto } from '@/shared/contract/equipment';
 import type { PersonDto } from '@/shared/contract/people';
+import type { RepairListDto, RepairPageDto } from '@/shared/contract/repair';
 import type { SpareDto } from '@/shared/contract/spare';
 import type { WaitsDto } from '@/shared/contract/waits';
 import type { WallDto } from '@/shared/contract/wall';
@@ -111,6 +111,60 @@ describe('the open charges of the demo', () => {
     const due = charges.find(({ title }) => title === 'R-2412')!.checkDueAt!;
     expect(Date.parse(due) - testNow).toBeGreaterThan(20 * 60_000);
     expect(Date.parse(due) - testNow).toBeLessThan(60 * 60_000);
+  });
+});
+
+describe('the repairs of the demo', () => {
+  it('are one for each charge on the bench, each with a believable reading of 96 groups, and one that is being proven', async () => {
+    const { repairs, counts } = await read<RepairListDto>('/api/repairs');
+    const { charges } = await read<BoardDto>('/api/board');
+    const proving = repairs.filter(({ step }) => step === 'prove');
+    expect(
+      repairs
+        .map(({ charge }) => charge?.title)
+        .filter(Boolean)
+        .sort(),
+    ).toEqual(charges.map(({ title }) => title).sort());
+    expect([proving.length, counts.open]).toEqual([1, charges.length + 1]);
+    for (const { id, number, charge } of repairs) {
+      const { readings, pack, failing, computed } = await read<RepairPageDto>(`/api/repairs/${id}`);
+      const arrival = readings.at(-1)!;
+      expect([arrival.stage, arrival.groupVolts.length, pack.groupCount], number).toEqual(['arrival', 96, 96]);
+      expect(arrival.oddPositions, number).toEqual([failing]);
+      expect(arrival.spreadMillivolts, number).toBeGreaterThan(70);
+      expect(arrival.spreadMillivolts, number).toBeLessThan(115);
+      // The charge brings its spare to what the healthy groups read.
+      if (charge) expect(Math.abs(computed!.volts - charge.targetVolts), number).toBeLessThan(0.0005);
+    }
+  });
+
+  it('have one whose sources disagree, and a spread log of 102, 38 and 11 mV on the one being proven', async () => {
+    const { repairs } = await read<RepairListDto>('/api/repairs');
+    const blocked = repairs.filter(({ block }) => block?.code === 'sources-disagree');
+    expect(blocked.map(({ number, step, needsSomebody }) => [number, step, needsSomebody])).toEqual([
+      ['R-2423', 'second-source', true],
+    ]);
+    expect(blocked[0]!.block!.text).toBe('The pack says module 11, your meter says 12.');
+    const proving = repairs.find(({ step }) => step === 'prove')!;
+    const page = await read<RepairPageDto>(`/api/repairs/${proving.id}`);
+    expect(page.readings.map(({ spreadMillivolts }) => spreadMillivolts)).toEqual([11, 38, 102]);
+    expect(page.readings.map(({ change }) => change?.kind)).toEqual(['balanced', 'exchange', undefined]);
+    expect(page.removed).toMatchObject([{ fate: 'scrap' }]);
+    expect(page.wait).toHaveLength(1);
+    for (const reading of page.readings) expect(Date.parse(reading.at)).toBeLessThan(testNow);
+  });
+
+  it('wait by themselves from the target on: all that charge, but neither the ready one nor the undecided one', async () => {
+    const { repairs, counts } = await read<RepairListDto>('/api/repairs');
+    const still = repairs.filter(({ waits }) => !waits).map(({ number, step }) => [number, step]);
+    expect(still.filter(([, step]) => step !== 'prove')).toEqual([
+      ['R-2423', 'second-source'],
+      ['R-2408', 'fit'],
+    ]);
+    expect(counts.waiting).toBe(counts.open - still.length);
+    const ready = await read<RepairPageDto>(`/api/repairs/${repairs.find(({ number }) => number === 'R-2408')!.id}`);
+    expect(ready.wait).toHaveLength(1);
+    expect(ready.wait[0]!.to).toBe(ready.charge!.readyAt);
   });
 });
 
@@ -268,15 +322,4 @@ describe('seeding', () => {
     expect(await manager.count(Workshop)).toBe(1);
     await fresh.close();
   }, 300_000);
-
-  it('puts a machine without a place beside the harbour, and opens its day around the seeding', () => {
-    expect(demoZone('UTC')).toBe('Europe/Amsterdam');
-    expect(demoZone('America/Toronto')).toBe('America/Toronto');
-    const night = Date.parse('2026-06-10T01:00:00Z');
-    expect(demoHours(night, 'Europe/Amsterdam')[2]).toEqual({ from: '00:00', to: '18:00' });
-    expect(demoHours(Date.parse('2026-06-07T20:00:00Z'), 'Europe/Amsterdam')[6]).toEqual({
-      from: '16:00',
-      to: '23:59',
-    });
-  });
 });

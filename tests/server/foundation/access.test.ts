@@ -103,6 +103,9 @@ describe('the routes', () => {
       'POST /api/charges/:id/shelve',
       'POST /api/charges/:id/start',
       'POST /api/charges/:id/stop',
+      'POST /api/repairs',
+      'POST /api/repairs/:id/readings',
+      'POST /api/repairs/:id/second-source',
     ]);
   });
 });

@@ -28,12 +28,17 @@ afterAll(() => bench.server.close());
 
 /** What the migrations since the first add. */
 const comeAndGo = {
-  tables: ['spare_capacity'],
+  tables: [
+    'spare_capacity',
+    ...['pack_type', 'repair', 'repair_person', 'pack_reading', 'second_source', 'removed_module', 'repair_wait'],
+    'repair_event',
+  ],
   columns: [
     ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],
     ...['curve_id', 'own_curve', 'pulse_short_s', 'pulse_short_milliohm', 'pulse_longer_s', 'pulse_longer_milliohm'],
     ...['cold_current_percent', 'warm_current_percent', 'precharge_below_volts'],
     ...['display_step_amps', 'leads_measured', 'derating_above_celsius', 'derating_percent', 'duty_percent'],
+    ...['technician_decides', 'repair_id'],
   ],
 };
 

@@ -4,6 +4,7 @@
  */
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from '@/tests/support/forms';
 import type { Furnished } from '@/tests/support/furnished';
+import { packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
 
@@ -35,6 +36,15 @@ const charge =
 const wish = (f: Furnished) => ({ ...planForm(f.spareId), meterId: f.meterId, readyBy: null, clipOnAt: null });
 const charger = (f: Furnished) =>
   chargerForm({ name: 'One more', meterId: f.meterId, channels: [channelForm({ name: 'New 1' })] });
+const booked = (f: Furnished) =>
+  repairForm(f.typeId, { packTypeId: f.repairs.packTypeId, personIds: [f.workshop.people.technician.id] });
+const repair =
+  (body: (f: Furnished) => object = () => ({}), of: 'repairId' | 'waitingRepairId' = 'repairId') =>
+  (f: Furnished): Fit => ({
+    params: { id: f.repairs[of] },
+    body: body(f),
+    rev: of === 'repairId' ? f.repairs.repairRev : f.repairs.waitingRev,
+  });
 const resistor = { name: 'One more', ohm: '0.2', maxWatts: '25' };
 const meter = { name: 'One more', offsetMillivolts: '1', checkedAt: null };
 
@@ -178,7 +188,9 @@ export const routeFixtures: Record<string, RouteFixture> = {
   },
   'POST /api/plans': technician((f) => ({ body: wish(f) })),
   'GET /api/charges': technician(() => ({ query: 'open=1' })),
-  'POST /api/charges': technician((f) => ({ body: { ...wish(f), optionId: f.optionId, topUpOf: f.chargeId } })),
+  'POST /api/charges': technician((f) => ({
+    body: { ...wish(f), optionId: f.optionId, topUpOf: f.chargeId, repairId: f.repairs.waitingRepairId },
+  })),
   'GET /api/charges/:id': technician(charge()),
   'DELETE /api/charges/:id': technician(charge()),
   'POST /api/charges/:id/checks': technician(charge(() => ({ code: 'isolation', answer: 'yes' }))),
@@ -205,6 +217,53 @@ export const routeFixtures: Record<string, RouteFixture> = {
   })),
   'POST /api/charges/:id/fit': technician(charge()),
   'POST /api/charges/:id/shelve': technician(charge(() => ({ shelfPlace: 'D4' }))),
+
+  'GET /api/pack-types': technician(),
+  'POST /api/pack-types': manager((f) => ({ body: { name: 'One more', pack: packForm(f.typeId), note: null } })),
+  'PATCH /api/pack-types/:id': manager((f) => ({
+    params: { id: f.repairs.packTypeId },
+    body: { name: 'Renamed', pack: packForm(f.typeId), note: null },
+  })),
+  'GET /api/repairs': technician(),
+  'POST /api/repairs': technician((f) => ({ body: booked(f) })),
+  'GET /api/repairs/:id': technician(repair()),
+  'PATCH /api/repairs/:id': technician(repair(booked)),
+  'POST /api/repairs/:id/readings': technician(repair((f) => packReadingForm({ meterId: f.meterId }))),
+  'POST /api/repairs/:id/readings/:readingId/set-aside': technician((f) => ({
+    params: { id: f.repairs.repairId, readingId: f.repairs.packReadingId },
+    body: { reason: 'Another pack.' },
+  })),
+  'POST /api/repairs/:id/second-source': technician(
+    repair((f) => secondSourceForm(f.repairs.packReadingId, { meterId: f.meterId })),
+  ),
+  'POST /api/repairs/:id/second-source/:sourceId/decision': foreman((f) => ({
+    params: { id: f.repairs.repairId, sourceId: f.repairs.sourceId },
+    body: { decision: 'module', modulePosition: '2', reason: 'Read at the busbar.' },
+  })),
+  'POST /api/repairs/:id/target': technician(
+    repair(
+      (f) => ({ readingId: f.repairs.waitingReadingId, volts: null, toleranceMillivolts: '4', reason: '' }),
+      'waitingRepairId',
+    ),
+  ),
+  'GET /api/repairs/:id/candidates': technician(repair(undefined, 'waitingRepairId')),
+  'POST /api/repairs/:id/spare': technician(repair((f) => ({ spareId: f.spareId }), 'waitingRepairId')),
+  'DELETE /api/repairs/:id/spare': technician(repair(undefined, 'waitingRepairId')),
+  'POST /api/repairs/:id/removed': technician(
+    repair(() => ({ modulePosition: '2', fate: 'scrap', note: '' }), 'waitingRepairId'),
+  ),
+  'POST /api/repairs/:id/hand-over': technician(repair(() => ({ note: 'Taken along unfinished.' }))),
+  'POST /api/repairs/:id/archive': technician((f) => ({
+    params: { id: f.repairs.handedOverId },
+    body: { archived: true },
+  })),
+  'POST /api/repairs/:id/delete': manager(repair(() => ({ reason: 'Booked twice.' }))),
+  'POST /api/repairs/:id/restore': manager((f) => ({ params: { id: f.repairs.deletedId } })),
+  'PATCH /api/repairs/:id/wait/:waitId': technician((f) => ({
+    params: { id: f.repairs.waitingRepairId, waitId: f.repairs.waitId },
+    body: { from: '2026-06-09T09:00:00Z', to: null, reason: 'The lid was off earlier.' },
+    rev: f.repairs.waitingRev,
+  })),
 
   'GET /api/board': technician(),
   'GET /api/alerts': technician(),

@@ -38,6 +38,7 @@ export function pastChargeRow(past: PastCharge): Charge {
     repairRef: past.repairRef ?? null,
     modulePosition: null,
     spareId: past.spareId,
+    repairId: null,
     neighbourSpareId: null,
     moduleTypeId: past.typeId,
     personId: past.personId,

@@ -1,0 +1,203 @@
+import { packTypeSchema } from '@/shared/contract/pack';
+import {
+  decideSourceSchema,
+  packReadingSchema,
+  secondSourceSchema,
+  setReadingAsideSchema,
+  takeTargetSchema,
+} from '@/shared/contract/pack-reading';
+import {
+  archiveRepairSchema,
+  changeRepairSchema,
+  correctWaitSchema,
+  deleteRepairSchema,
+  handOverRepairSchema,
+  removedModuleSchema,
+  repairSchema,
+  repairsQuerySchema,
+  reserveSpareSchema,
+} from '@/shared/contract/repair';
+import { candidates } from '../services/candidates.service';
+import { correctWait } from '../services/correct-wait.service';
+import {
+  archiveRepair,
+  deleteRepair,
+  handOverRepair,
+  recordRemoved,
+  restoreRepair,
+} from '../services/finish-repair.service';
+import { addPackReading, setReadingAside } from '../services/pack-readings.service';
+import { addPackType, changePackType, packTypes } from '../services/pack-types.service';
+import { freeSpare, reserveSpare } from '../services/repair-spares.service';
+import { takeTarget } from '../services/repair-targets.service';
+import { addRepair, changeBooked, repair, repairs } from '../services/repairs.service';
+import { addSecondSource, decideSource } from '../services/second-sources.service';
+import type { Policy, RoutesModule } from './define-route';
+
+const read: Policy = { kind: 'capability', capability: 'repair:read' };
+const write: Policy = { kind: 'capability', capability: 'repair:write' };
+const decide: Policy = { kind: 'capability', capability: 'repair:decide' };
+const remove: Policy = { kind: 'capability', capability: 'repair:delete' };
+const equipment: Policy = { kind: 'capability', capability: 'equipment:write' };
+
+const idOf = (params: Record<string, string>): string => params.id ?? '';
+
+export const repairsRoutes: RoutesModule = (route) => {
+  route({
+    method: 'get',
+    path: '/pack-types',
+    policy: read,
+    handle: ({ deps, member }) => packTypes(deps, member),
+  });
+  route({
+    method: 'post',
+    path: '/pack-types',
+    policy: equipment,
+    body: packTypeSchema,
+    status: 201,
+    handle: ({ deps, member, body, now }) => addPackType(deps, member, body, now),
+  });
+  route({
+    method: 'patch',
+    path: '/pack-types/:id',
+    policy: equipment,
+    body: packTypeSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) => changePackType(deps, member, idOf(params), rev, body, now),
+  });
+  route({
+    method: 'get',
+    path: '/repairs',
+    policy: read,
+    query: repairsQuerySchema,
+    handle: ({ deps, member, query, now }) => repairs(deps, member, query, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs',
+    policy: write,
+    body: repairSchema,
+    idempotent: true,
+    status: 201,
+    handle: ({ deps, member, body, now }) => addRepair(deps, member, body, now),
+  });
+  route({
+    method: 'get',
+    path: '/repairs/:id',
+    policy: read,
+    handle: ({ deps, member, params, now }) => repair(deps, member, idOf(params), now),
+  });
+  route({
+    method: 'patch',
+    path: '/repairs/:id',
+    policy: write,
+    body: changeRepairSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) => changeBooked(deps, member, idOf(params), rev, body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/readings',
+    policy: write,
+    body: packReadingSchema,
+    idempotent: true,
+    status: 201,
+    handle: ({ deps, member, params, body, now }) => addPackReading(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/readings/:readingId/set-aside',
+    policy: write,
+    body: setReadingAsideSchema,
+    handle: ({ deps, member, params, body, now }) =>
+      setReadingAside(deps, member, idOf(params), params.readingId ?? '', body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/second-source',
+    policy: write,
+    body: secondSourceSchema,
+    idempotent: true,
+    status: 201,
+    handle: ({ deps, member, params, body, now }) => addSecondSource(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/second-source/:sourceId/decision',
+    policy: decide,
+    body: decideSourceSchema,
+    handle: ({ deps, member, params, body, now }) =>
+      decideSource(deps, member, idOf(params), params.sourceId ?? '', body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/target',
+    policy: write,
+    body: takeTargetSchema,
+    handle: ({ deps, member, params, body, now }) => takeTarget(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'get',
+    path: '/repairs/:id/candidates',
+    policy: read,
+    handle: ({ deps, member, params, now }) => candidates(deps, member, idOf(params), now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/spare',
+    policy: write,
+    body: reserveSpareSchema,
+    handle: ({ deps, member, params, body, now }) => reserveSpare(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'delete',
+    path: '/repairs/:id/spare',
+    policy: write,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) => freeSpare(deps, member, idOf(params), rev, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/removed',
+    policy: write,
+    body: removedModuleSchema,
+    status: 201,
+    handle: ({ deps, member, params, body, now }) => recordRemoved(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/hand-over',
+    policy: write,
+    body: handOverRepairSchema,
+    handle: ({ deps, member, params, body, now }) => handOverRepair(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/archive',
+    policy: write,
+    body: archiveRepairSchema,
+    handle: ({ deps, member, params, body, now }) => archiveRepair(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/delete',
+    policy: remove,
+    body: deleteRepairSchema,
+    handle: ({ deps, member, params, body, now }) => deleteRepair(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/restore',
+    policy: remove,
+    handle: ({ deps, member, params, now }) => restoreRepair(deps, member, idOf(params), now),
+  });
+  route({
+    method: 'patch',
+    path: '/repairs/:id/wait/:waitId',
+    policy: write,
+    body: correctWaitSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) =>
+      correctWait(deps, member, { repairId: idOf(params), waitId: params.waitId ?? '' }, rev, body, now),
+  });
+};

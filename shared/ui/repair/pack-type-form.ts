@@ -1,0 +1,43 @@
+/** A template of a pack as it is typed. Pure. */
+import * as z from 'zod/mini';
+import { packTypeSchema, type PackTypeDto } from '@/shared/contract/pack';
+import { emptyPack, packTexts, packTypedOf, type PackTyped } from './pack-form';
+
+export interface PackTypeTyped {
+  name: string;
+  pack: PackTyped;
+  note: string;
+  baseRev: number;
+}
+
+export const packTypeTexts = (of: PackTypeDto | null): PackTypeTyped => ({
+  name: of?.name ?? '',
+  pack: of ? packTexts(of.pack) : emptyPack,
+  note: of?.note ?? '',
+  baseRev: of?.rev ?? 0,
+});
+
+export const packTypeForm = z.pipe(
+  z.transform((raw: unknown): unknown => {
+    const { name, pack, note } = raw as PackTypeTyped;
+    return { name, note, pack: packTypedOf(pack) };
+  }),
+  packTypeSchema,
+);
+
+export const packTypeNames = {
+  name: 'Name',
+  groups: 'Groups',
+  perModule: 'Groups per module',
+  positions: 'Module of each group',
+  note: 'Note',
+} as const;
+
+/** The texts in one level, for what differs between two of them. */
+export const flatPackType = ({ name, pack, note }: PackTypeTyped): Record<string, string> => ({
+  name,
+  groups: pack.groupCount,
+  perModule: pack.groupsPerModule,
+  positions: pack.positionOfGroup,
+  note,
+});

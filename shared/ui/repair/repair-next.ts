@@ -1,0 +1,52 @@
+/** The one thing to do next with a repair. Pure. */
+import type { RepairDto } from '@/shared/contract/repair';
+import { nextStep } from '../bench/next-step';
+import { planHref } from '../repair-spare/candidate-words';
+import { presentStep, standing } from './repair-words';
+
+export type RepairSheet = 'hand-over' | 'removed' | 'delete' | 'wait' | 'set-aside';
+export type RepairNext =
+  | { kind: 'go'; title: string; path: string }
+  | { kind: 'hand-over' | 'archive' | 'unarchive' | 'restore'; title: string };
+
+/** @param mayDecide whether this person may decide between two sources */
+export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext {
+  if (repair.state === 'deleted') return { kind: 'restore', title: 'Bring it back' };
+  if (repair.state === 'archived') return { kind: 'unarchive', title: 'Take it out of the archive' };
+  if (repair.state === 'handed-over') return { kind: 'archive', title: 'Put it into the archive' };
+  const page = `/repairs/${repair.id}`;
+  const go = (title: string, path: string): RepairNext => ({ kind: 'go', title, path });
+  const { block, charge } = repair;
+  if (block?.code === 'sources-disagree')
+    return go(mayDecide ? 'Decide which module it is' : 'Look at the two sources', `${page}/second-source`);
+  if (block?.code === 'module-unknown') return go('Enter the second source', `${page}/second-source`);
+  const step = presentStep(repair.steps)?.step ?? null;
+  switch (step) {
+    case 'read':
+      return go('Read the pack', `${page}/reading`);
+    case 'second-source':
+      return go('Enter the second source', `${page}/second-source`);
+    case 'target':
+      return go('Take the target', `${page}/target`);
+    case 'spare':
+      return go('Choose a spare', `${page}/spares`);
+    case 'charge': {
+      if (!charge) {
+        const plan = planHref(repair);
+        return plan ? go('Plan a charge', plan) : go('Choose a spare', `${page}/spares`);
+      }
+      const next = nextStep(charge);
+      return next ? go(next.title, next.path) : go('Open the charge', `/charges/${charge.id}`);
+    }
+    case 'fit': {
+      const ready = repair.charges.find(({ stage }) => stage === 'ready') ?? charge;
+      return ready ? go('Fit it, or print its label', `/charges/${ready.id}`) : go('Choose a spare', `${page}/spares`);
+    }
+    case 'prove':
+      return standing(repair.readings).some(({ stage }) => stage !== 'arrival')
+        ? go('Prove the repair', `${page}/prove`)
+        : go('Read the pack after the fit', `${page}/reading`);
+    case null:
+      return { kind: 'hand-over', title: 'Hand it over' };
+  }
+}
