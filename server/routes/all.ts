@@ -6,6 +6,7 @@ import type { RoutesModule } from './define-route';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
 import { peopleRoutes } from './people.routes';
+import { photosRoutes } from './photos.routes';
 import { plansRoutes } from './plans.routes';
 import { repairsRoutes } from './repairs.routes';
 import { sessionRoutes } from './session.routes';
@@ -24,6 +25,7 @@ export const routesModules: RoutesModule[] = [
   stockRoutes,
   plansRoutes,
   repairsRoutes,
+  photosRoutes,
   chargesRoutes,
   boardRoutes,
   alertsRoutes,

@@ -71,6 +71,8 @@ export function repairOf(step: RepairStep | null, more: Partial<RepairPageDto> =
     spare: null,
     charges: [],
     removed: [],
+    photos: [],
+    conditions: [],
     wait: [],
     expectedAfterFit: null,
     forecast: null,
