@@ -53,7 +53,7 @@ export const handOverRepair = (
 ): Promise<RepairPageDto> =>
   changeRepair(deps, member, id, now, { stock: true }, ({ file, note }) => {
     const condition = conditionBlock(file, repairFacts(file).failing);
-    if (condition !== null) throw conflict(condition.code, condition.text);
+    if (condition !== null) throw conflict('module_condition', condition.text);
     const missing = repairSteps(file).flatMap(({ step, state }) =>
       state === 'done' ? [] : [lowerFirst(repairStepNames[step])],
     );

@@ -66,7 +66,11 @@ export async function loadRepairFiles(
   const fitters = await fittersOf(manager, workshopId, fitted);
   const packTypes = new Map((await listPackTypes(manager, workshopId)).map((type) => [type.id, type.name]));
   const types = await typesById(manager, workshopId, given(repairs.map(({ moduleTypeId }) => moduleTypeId)));
-  const spares = await sparesById(manager, workshopId, given([...repairs, ...[...photos.values()].flat()].map(({ spareId }) => spareId)));
+  const spares = await sparesById(
+    manager,
+    workshopId,
+    given([...repairs, ...[...photos.values()].flat()].map(({ spareId }) => spareId)),
+  );
   return repairs.map((repair) => ({
     ...around,
     repair,

@@ -38,8 +38,9 @@ function ask(agent: TestAgent, route: WalkedRoute, fit: Fit) {
     return encodeURIComponent(value);
   });
   const address = fit.query ? `${path}?${fit.query}` : path;
-  const test =
-    route.method === 'get' || route.method === 'delete'
+  const test = route.handler.asks?.file
+    ? agent.upload(address, 'photo', fit.file ?? Buffer.alloc(0), 'photo.jpg')
+    : route.method === 'get' || route.method === 'delete'
       ? agent[route.method](address)
       : agent[route.method](address, fit.body);
   if (route.handler.asks?.ifMatch) void test.set('If-Match', `"${fit.rev ?? 1}"`);
@@ -104,6 +105,7 @@ describe('the routes', () => {
       'POST /api/charges/:id/start',
       'POST /api/charges/:id/stop',
       'POST /api/repairs',
+      'POST /api/repairs/:id/photos',
       'POST /api/repairs/:id/readings',
       'POST /api/repairs/:id/second-source',
     ]);
