@@ -13,6 +13,7 @@ import type {
   SecondSourceInput,
   TakeTargetInput,
 } from '@/shared/contract/pack-reading';
+import { photoField, type PhotoNoteInput } from '@/shared/contract/photo';
 import type {
   CandidateDto,
   ChangeRepairInput,
@@ -175,3 +176,32 @@ export const useCorrectWait = () =>
       api.patch<RepairPageDto>(`/repairs/${id}/wait/${waitId}`, input, { rev }),
     [...touched, roots.waits],
   );
+
+/** A chosen picture; `mark` tells two of them apart, which JSON cannot. */
+export interface PhotoToSend {
+  id: string;
+  file: Blob;
+  mark: string;
+  onSent: (share: number) => void;
+}
+
+export const useAddPhoto = () =>
+  useRepairWrite(({ id, file, onSent }: PhotoToSend, idempotencyKey) => {
+    const form = new FormData();
+    form.append(photoField, file, 'photo');
+    return api.upload<RepairPageDto>(`/repairs/${id}/photos`, form, { idempotencyKey, onSent });
+  });
+
+/** What is seen may set a spare aside and take a waiting charge off. */
+export const useNotePhoto = () =>
+  useRepairWrite(
+    ({ id, rev, ...input }: PhotoNoteInput & RepairAct) => api.patch<RepairPageDto>(`/photos/${id}`, input, { rev }),
+    withCharges,
+  );
+
+export const useRemovePhoto = () =>
+  useRepairWrite(({ id, rev }: RepairAct) => api.delete<RepairPageDto>(`/photos/${id}`, { rev }));
+
+/** Where a photo's picture is. */
+export const photoAddress = (id: string, part: 'picture' | 'thumbnail'): string =>
+  `/api/photos/${id}${part === 'thumbnail' ? '/thumbnail' : ''}`;

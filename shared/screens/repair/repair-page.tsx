@@ -28,6 +28,7 @@ import { Screen } from '@/shared/ui/screen/screen';
 import { Surface } from '@/shared/ui/theme/surface';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 import { NextButton } from './next-button';
+import { PhotosPart } from './photos-part';
 import { RepairMenu } from './repair-menu';
 import { RepairSheets, type OpenSheet } from './repair-sheets';
 
@@ -64,6 +65,7 @@ export function RepairPage({
       offline={offline}
       onGo={onGo}
       onHandOver={() => setSheet({ kind: 'hand-over' })}
+      onRemoved={() => setSheet({ kind: 'removed' })}
     />
   );
   const readings = (
@@ -77,6 +79,7 @@ export function RepairPage({
   );
   const tail = (
     <>
+      <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />
       <RemovedPart removed={repair.removed} now={now} />
       <WaitPart
         waits={repair.wait}
