@@ -27,7 +27,7 @@ const ofPhoto = ({ spare, modulePosition }: PhotoDto): Of =>
 function sparesOf({ spare, charges }: RepairDto, photo: PhotoDto): { id: string; label: string }[] {
   const all = [
     ...(spare ? [spare] : []),
-    ...charges.map(({ spareId, spareLabel }) => ({ id: spareId, label: spareLabel })),
+    ...charges.map((charge) => charge.spare),
     ...(photo.spare ? [photo.spare] : []),
   ];
   return all.filter(({ id }, place) => all.findIndex((one) => one.id === id) === place);
@@ -59,7 +59,7 @@ export function PhotoSheet({
   const spareId = of.startsWith('spare.') ? of.slice('spare.'.length) : null;
   const modulePosition = of.startsWith('module.') ? of.slice('module.'.length) : null;
   const waiting =
-    seen !== 'none' && spareId !== null && repair.charge?.spareId === spareId
+    seen !== 'none' && spareId !== null && repair.charge?.spare.id === spareId
       ? ['planned', 'queued'].includes(repair.charge.stage)
         ? repair.charge
         : null

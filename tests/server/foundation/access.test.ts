@@ -3,8 +3,10 @@
  * another workshop's ids. What is expected is written by hand in route-fixtures.ts, so that a slip in a route's policy
  * and a route that nobody thought of both fail here.
  */
+import fs from 'node:fs';
 import { afterAll, describe, expect, it } from 'vitest';
 import type { Response } from 'supertest';
+import { photoFolder } from '@/server/data-files';
 import { can, roles, type Role } from '@/shared/contract/roles';
 import { furnish, idsOf, newKey } from '@/tests/support/furnished';
 import { makeAgent, makeTestServer, type TestAgent } from '@/tests/support/server';
@@ -22,6 +24,9 @@ const limits = Object.fromEntries(
 const server = await makeTestServer({ demo: true, limits });
 const { own, other } = await furnish(server);
 const routes = walkRouter(server.app);
+const photos = photoFolder(server.deps.config.dataDir);
+const photosKept = `${photos}-kept`;
+fs.cpSync(photos, photosKept, { recursive: true });
 afterAll(() => server.close());
 
 const where = 'tests/server/foundation/route-fixtures.ts';
@@ -48,7 +53,7 @@ function ask(agent: TestAgent, route: WalkedRoute, fit: Fit) {
   return test;
 }
 
-/** Takes back whatever the work has changed: the one connection nests every transaction of the server in this one. */
+/** Takes back whatever the work has changed, and lays back the files it has removed: the one connection nests every transaction of the server in this one. */
 async function isolated<T>(work: () => Promise<T>): Promise<T> {
   const runner = server.deps.dataSource.createQueryRunner();
   await runner.startTransaction();
@@ -56,6 +61,7 @@ async function isolated<T>(work: () => Promise<T>): Promise<T> {
     return await work();
   } finally {
     await runner.rollbackTransaction();
+    fs.cpSync(photosKept, photos, { recursive: true });
   }
 }
 
