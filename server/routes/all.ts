@@ -9,6 +9,7 @@ import { peopleRoutes } from './people.routes';
 import { photosRoutes } from './photos.routes';
 import { plansRoutes } from './plans.routes';
 import { repairsRoutes } from './repairs.routes';
+import { searchRoutes } from './search.routes';
 import { sessionRoutes } from './session.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
@@ -26,6 +27,7 @@ export const routesModules: RoutesModule[] = [
   plansRoutes,
   repairsRoutes,
   photosRoutes,
+  searchRoutes,
   chargesRoutes,
   boardRoutes,
   alertsRoutes,

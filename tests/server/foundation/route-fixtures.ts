@@ -280,6 +280,8 @@ export const routeFixtures: Record<string, RouteFixture> = {
   ),
   'DELETE /api/photos/:id': technician(photo()),
 
+  'GET /api/search': technician(() => ({ query: 'q=van' })),
+
   'GET /api/board': technician(),
   'GET /api/alerts': technician(),
   'POST /api/alerts/:id/take': technician((f) => ({ params: { id: f.alertId } })),
