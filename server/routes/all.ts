@@ -2,6 +2,7 @@
 import { alertsRoutes } from './alerts.routes';
 import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
+import { customersRoutes } from './customers.routes';
 import type { RoutesModule } from './define-route';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
@@ -27,6 +28,7 @@ export const routesModules: RoutesModule[] = [
   plansRoutes,
   repairsRoutes,
   photosRoutes,
+  customersRoutes,
   searchRoutes,
   chargesRoutes,
   boardRoutes,

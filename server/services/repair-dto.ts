@@ -160,6 +160,14 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
             by: personRef(people, repair.deletedById)!,
             reason: repair.deleteReason ?? '',
           },
+    erased:
+      repair.erasedAt === null
+        ? null
+        : {
+            at: toInstant(repair.erasedAt),
+            by: personRef(people, repair.erasedById)!,
+            reason: repair.eraseReason ?? '',
+          },
   };
 }
 

@@ -178,6 +178,8 @@ export interface RepairDto extends RepairCardDto, Omit<RepairInput, 'number' | '
   bookedBy: PersonRef;
   handedOver: { at: Instant; by: PersonRef; note: string | null } | null;
   deleted: { at: Instant; by: PersonRef; reason: string } | null;
+  /** The customer's name and contact were erased. */
+  erased: { at: Instant; by: PersonRef; reason: string } | null;
 }
 
 export interface RepairPageDto extends RepairDto {

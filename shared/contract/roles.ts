@@ -18,6 +18,7 @@ export const capabilities = [
   'repair:write',
   'repair:decide',
   'repair:delete',
+  'customer:data',
   'alert:take',
   'wall:approve',
   'wall:revoke',
@@ -51,7 +52,7 @@ const foreman: Capability[] = [
   'wall:revoke',
   'waits:read',
 ];
-const manager: Capability[] = [...foreman, 'repair:delete', 'equipment:write', 'people:write', 'workshop:write'];
+const manager: Capability[] = [...foreman, 'repair:delete', 'customer:data', 'equipment:write', 'people:write', 'workshop:write'];
 
 export const roleCapabilities: Record<Role, readonly Capability[]> = { technician, foreman, manager };
 

@@ -59,7 +59,7 @@ const type = async (text: string) =>
 it('names what else is found by what it is, leads there as a link, and leaves out what is listed', async () => {
   drawn().answers['GET /api/search?q=grey'] = () => Response.json(answer);
   await type('grey');
-  const list = await screen.findByRole('list', { name: 'Found elsewhere' });
+  const list = await screen.findByRole('list', { name: 'Found elsewhere' }, { timeout: 4000 });
   const links = [...list.querySelectorAll('a')];
   expect(links.map((link) => [link.getAttribute('aria-label'), link.getAttribute('href')])).toEqual([
     ['Repair R-1802, Grey bus, in the archive', '/repairs/r9'],

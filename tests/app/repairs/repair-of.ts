@@ -79,6 +79,7 @@ export function repairOf(step: RepairStep | null, more: Partial<RepairPageDto> =
     bookedBy: ines,
     handedOver: null,
     deleted: null,
+    erased: null,
     events: [{ id: 'e1', at: bookedAt, by: ines, text: 'booked Grey van' }],
     ...more,
   };

@@ -280,6 +280,9 @@ export const routeFixtures: Record<string, RouteFixture> = {
   ),
   'DELETE /api/photos/:id': technician(photo()),
 
+  'GET /api/repairs/:id/customer.json': manager(repair()),
+  'POST /api/repairs/:id/customer/erase': manager(repair(() => ({ reason: 'Asked for by the customer.' }))),
+
   'GET /api/search': technician(() => ({ query: 'q=van' })),
 
   'GET /api/board': technician(),

@@ -31,8 +31,8 @@ const photo = table('photo', {
 });
 
 /** Photos of repairs; their files lie in the data folder. */
-export class Photos1765500000000 implements MigrationInterface {
-  readonly name = 'Photos1765500000000';
+export class Photos1765550000000 implements MigrationInterface {
+  readonly name = 'Photos1765550000000';
 
   async up(runner: QueryRunner): Promise<void> {
     await runner.createTable(new Table(photo));
