@@ -26,6 +26,7 @@ import type {
 } from '@/shared/contract/repair';
 import { api } from './api';
 import { roots, type Root } from './query-keys';
+import { saveFile } from './save-file';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
@@ -205,3 +206,20 @@ export const useRemovePhoto = () =>
 /** Where a photo's picture is. */
 export const photoAddress = (id: string, part: 'picture' | 'thumbnail'): string =>
   `/api/photos/${id}${part === 'thumbnail' ? '/thumbnail' : ''}`;
+
+/** Saves the repairs of a list as CSV on this device; without a state all but the deleted ones. */
+export async function downloadRepairs(filter: RepairFilter = {}): Promise<void> {
+  saveFile(await api.blob('/repairs.csv', { query: { ...filter } }), 'repairs.csv');
+}
+
+/** Saves everything that is kept of the customer of a repair as a file on this device. */
+export async function saveCustomerData(id: string): Promise<void> {
+  saveFile(await api.blob(`/repairs/${id}/customer.json`), 'customer-data.json');
+}
+
+export const useEraseCustomer = () =>
+  useRepairWrite(
+    ({ id, reason }: { id: string; reason: string }) =>
+      api.post<RepairPageDto>(`/repairs/${id}/customer/erase`, { reason }),
+    [...touched, roots.search],
+  );

@@ -7,6 +7,7 @@ import { useLink } from '@/shared/client/link';
 import { useRepairs } from '@/shared/client/repairs';
 import { useCan } from '@/shared/client/session';
 import { useSettled } from '@/shared/client/settled';
+import { ExportLink } from '@/shared/screens/repair/export-link';
 import { FoundPart } from '@/shared/screens/repair/found-part';
 import { Button } from '@/shared/ui/primitives/button';
 import { IconButton } from '@/shared/ui/primitives/icon-button';
@@ -140,6 +141,7 @@ export default function Repairs() {
               </Txt>
             ) : null}
             {older}
+            <ExportLink filter={{ q: looked, state: stateAsked(view) ?? 'open' }} offline={old} />
           </View>
         )
       ) : query.isError ? (

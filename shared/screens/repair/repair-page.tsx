@@ -27,6 +27,7 @@ import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { Surface } from '@/shared/ui/theme/surface';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+import { CustomerPart } from './customer-part';
 import { NextButton } from './next-button';
 import { PhotosPart } from './photos-part';
 import { RepairMenu } from './repair-menu';
@@ -88,6 +89,7 @@ export function RepairPage({
       />
     </>
   );
+  const customer = <CustomerPart repair={repair} offline={offline} />;
   const since = dateLong(Date.parse(repair.bookedAt), zone);
   return (
     <Screen
@@ -121,6 +123,7 @@ export function RepairPage({
               <FactsPart repair={repair} now={now} />
               {wide ? readings : null}
               {wide ? tail : null}
+              {wide ? customer : null}
             </View>
           }
           work={
@@ -150,6 +153,7 @@ export function RepairPage({
                 {readings}
                 {tail}
                 <EventsPart events={repair.events} now={now} />
+                {customer}
               </View>
             )
           }

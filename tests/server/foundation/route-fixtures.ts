@@ -280,6 +280,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
   ),
   'DELETE /api/photos/:id': technician(photo()),
 
+  'GET /api/repairs.csv': foreman(),
   'GET /api/repairs/:id/customer.json': manager(repair()),
   'POST /api/repairs/:id/customer/erase': manager(repair(() => ({ reason: 'Asked for by the customer.' }))),
 
