@@ -208,14 +208,16 @@ export const photoAddress = (id: string, part: 'picture' | 'thumbnail'): string 
   `/api/photos/${id}${part === 'thumbnail' ? '/thumbnail' : ''}`;
 
 /** Saves the repairs of a list as CSV on this device; without a state all but the deleted ones. */
-export async function downloadRepairs(filter: RepairFilter = {}): Promise<void> {
-  saveFile(await api.blob('/repairs.csv', { query: { ...filter } }), 'repairs.csv');
-}
+export const useSaveRepairs = () =>
+  useWrite<RepairFilter>({
+    send: async (filter) => saveFile(await api.blob('/repairs.csv', { query: { ...filter } }), 'repairs.csv'),
+  });
 
 /** Saves everything that is kept of the customer of a repair as a file on this device. */
-export async function saveCustomerData(id: string): Promise<void> {
-  saveFile(await api.blob(`/repairs/${id}/customer.json`), 'customer-data.json');
-}
+export const useSaveCustomerData = () =>
+  useWrite<string>({
+    send: async (id) => saveFile(await api.blob(`/repairs/${id}/customer.json`), 'customer-data.json'),
+  });
 
 export const useEraseCustomer = () =>
   useRepairWrite(

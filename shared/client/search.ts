@@ -1,4 +1,4 @@
-import { queryOptions, useQuery } from '@tanstack/react-query';
+import { keepPreviousData, queryOptions, useQuery } from '@tanstack/react-query';
 import type { SearchDto } from '@/shared/contract/search';
 import { api } from './api';
 import { roots } from './query-keys';
@@ -11,6 +11,6 @@ export const searchQuery = (q: string) =>
     queryFn: ({ signal }) => api.get<SearchDto>('/search', { query: { q }, signal }),
     staleTime: staleTimes.running,
     enabled: q !== '',
-    placeholderData: (last: SearchDto | undefined) => (q === '' ? undefined : last),
+    placeholderData: keepPreviousData,
   });
 export const useSearch = (q: string) => useQuery(searchQuery(q));

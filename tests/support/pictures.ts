@@ -1,8 +1,8 @@
 /** Pictures made in the test, and what a JPEG carries beside its picture, read without the library that writes it. */
-import sharp from 'sharp';
+import sharp, { type Sharp } from 'sharp';
 
 /** A picture whose left half is red and whose right half is blue, so that it is seen which way up it is. */
-export const twoHalves = (width = 400, height = 200): sharp.Sharp =>
+export const twoHalves = (width = 400, height = 200): Sharp =>
   sharp({ create: { width, height, channels: 3, background: '#0000ff' } }).composite([
     {
       input: { create: { width: width / 2, height, channels: 3, background: '#ff0000' } },

@@ -1,8 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
-import { useMutation } from '@tanstack/react-query';
 import { useGate } from '@/shared/client/gate';
-import { saveCustomerData, useEraseCustomer } from '@/shared/client/repairs';
+import { useEraseCustomer, useSaveCustomerData } from '@/shared/client/repairs';
 import type { RepairDto } from '@/shared/contract/repair';
 import { dateLong } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
@@ -17,7 +16,7 @@ export function CustomerPart({ repair, offline }: { repair: RepairDto; offline: 
   const { zone } = useFormats();
   const [asking, setAsking] = useState(false);
   const erase = useEraseCustomer();
-  const save = useMutation({ mutationFn: () => saveCustomerData(repair.id) });
+  const save = useSaveCustomerData();
   const named = repair.customerName !== null || repair.customerContact !== null;
   const { erased } = repair;
   const problem = problemOfAct(save.error);
@@ -43,7 +42,7 @@ export function CustomerPart({ repair, offline }: { repair: RepairDto; offline: 
               disabled={offline}
               describedBy={offline ? 'customer-why' : undefined}
               busy={save.isPending}
-              onPress={() => save.mutate()}
+              onPress={() => save.mutate(repair.id)}
             />
             <Button
               look="danger"

@@ -1,7 +1,6 @@
 import { View } from 'react-native';
-import { useMutation } from '@tanstack/react-query';
 import { sentenceOf } from '@/shared/client/api-problem';
-import { downloadRepairs, type RepairFilter } from '@/shared/client/repairs';
+import { useSaveRepairs, type RepairFilter } from '@/shared/client/repairs';
 import { useCan } from '@/shared/client/session';
 import { Button } from '@/shared/ui/primitives/button';
 import { Txt } from '@/shared/ui/primitives/txt';
@@ -9,7 +8,7 @@ import { Txt } from '@/shared/ui/primitives/txt';
 /** Saves the list as a table, all its pages; only for those who may take it out of the workshop. */
 export function ExportLink({ filter, offline }: { filter: RepairFilter; offline: boolean }) {
   const may = useCan('repair:export');
-  const save = useMutation({ mutationFn: () => downloadRepairs(filter) });
+  const save = useSaveRepairs();
   if (!may) return null;
   return (
     <View style={{ rowGap: 4, alignItems: 'flex-start' }}>
@@ -26,7 +25,7 @@ export function ExportLink({ filter, offline }: { filter: RepairFilter; offline:
         disabled={offline}
         describedBy={offline ? 'export-why' : undefined}
         busy={save.isPending}
-        onPress={() => save.mutate()}
+        onPress={() => save.mutate(filter)}
       />
       {offline ? (
         <Txt kind="small" tone="ink2" nativeID="export-why">

@@ -2,6 +2,10 @@
 import type { SearchHitDto } from '@/shared/contract/search';
 import { stages } from '../stage/stages';
 
+/** A charge that is over has no mark of its own. */
+const stageWord = (stage: Extract<SearchHitDto, { kind: 'charge' }>['stage']): string =>
+  stage === 'fitted' || stage === 'shelved' ? stage : stages[stage].word.toLowerCase();
+
 export interface HitWords {
   /** 'Repair', 'Spare', 'Charge' */
   kind: string;
@@ -34,11 +38,7 @@ export function hitWords(hit: SearchHitDto): HitWords {
       return {
         kind: 'Charge',
         title: hit.number,
-        text: joined([
-          hit.title === hit.number ? null : `for ${hit.title}`,
-          hit.spareLabel,
-          stages[hit.stage].word.toLowerCase(),
-        ]),
+        text: joined([hit.title === hit.number ? null : `for ${hit.title}`, hit.spareLabel, stageWord(hit.stage)]),
         path: `/charges/${hit.id}`,
       };
   }
