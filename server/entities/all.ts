@@ -16,6 +16,7 @@ import { ModuleType } from './module-type';
 import { PackReading } from './pack-reading';
 import { PackType } from './pack-type';
 import { Person } from './person';
+import { Photo } from './photo';
 import { RemovedModule } from './removed-module';
 import { Repair } from './repair';
 import { RepairEvent } from './repair-event';
@@ -60,6 +61,7 @@ export const entities = [
   PackReading,
   SecondSource,
   RemovedModule,
+  Photo,
   RepairWait,
   RepairEvent,
   Wall,

@@ -1,6 +1,7 @@
 /** The rows that hang on repairs, for one repair or for a whole list at once. */
 import { In, IsNull, type EntityManager, type FindOptionsOrder, type ObjectLiteral } from 'typeorm';
 import { PackReading } from '../entities/pack-reading';
+import { Photo } from '../entities/photo';
 import { RemovedModule } from '../entities/removed-module';
 import { RepairEvent } from '../entities/repair-event';
 import { RepairPerson } from '../entities/repair-person';
@@ -30,6 +31,7 @@ export const peopleOfRepairs = listing(RepairPerson, { place: 'ASC' });
 export const readingsOfRepairs = listing(PackReading, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 export const sourcesOfRepairs = listing(SecondSource, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 export const removedOfRepairs = listing(RemovedModule, { at: 'DESC', id: 'ASC' });
+export const photosOfRepairs = listing(Photo, { at: 'DESC', id: 'ASC' });
 export const waitsOfRepairs = listing(RepairWait, { fromAt: 'DESC', id: 'ASC' });
 export const eventsOfRepairs = listing(RepairEvent, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 

@@ -1,3 +1,4 @@
+import { pipeline } from 'node:stream/promises';
 import { packTypeSchema } from '@/shared/contract/pack';
 import {
   decideSourceSchema,
@@ -30,6 +31,7 @@ import { addPackReading, setReadingAside } from '../services/pack-readings.servi
 import { addPackType, changePackType, packTypes } from '../services/pack-types.service';
 import { freeSpare, reserveSpare } from '../services/repair-spares.service';
 import { takeTarget } from '../services/repair-targets.service';
+import { repairsCsv } from '../services/repairs-csv.service';
 import { addRepair, changeBooked, repair, repairs } from '../services/repairs.service';
 import { addSecondSource, decideSource } from '../services/second-sources.service';
 import type { Policy, RoutesModule } from './define-route';
@@ -38,6 +40,7 @@ const read: Policy = { kind: 'capability', capability: 'repair:read' };
 const write: Policy = { kind: 'capability', capability: 'repair:write' };
 const decide: Policy = { kind: 'capability', capability: 'repair:decide' };
 const remove: Policy = { kind: 'capability', capability: 'repair:delete' };
+const exporting: Policy = { kind: 'capability', capability: 'repair:export' };
 const equipment: Policy = { kind: 'capability', capability: 'equipment:write' };
 
 const idOf = (params: Record<string, string>): string => params.id ?? '';
@@ -71,6 +74,17 @@ export const repairsRoutes: RoutesModule = (route) => {
     policy: read,
     query: repairsQuerySchema,
     handle: ({ deps, member, query, now }) => repairs(deps, member, query, now),
+  });
+  route({
+    method: 'get',
+    path: '/repairs.csv',
+    policy: exporting,
+    query: repairsQuerySchema,
+    handle: async ({ deps, member, query, now, response }) => {
+      const file = await repairsCsv(deps, member, query, now);
+      response.attachment(file.name).type('text/csv; charset=utf-8');
+      await pipeline(file.lines, response);
+    },
   });
   route({
     method: 'post',

@@ -19,8 +19,10 @@ import { personRef } from './alert-dto';
 import { chargeCard } from './charge-dto';
 import { overdueSince } from './charge-due';
 import { toInstant, toOptionalInstant } from './instants';
+import { moduleConditions } from './module-conditions';
 import { computedTarget, packVerdict } from './pack-numbers';
 import { packReadingDto, secondSourceDto } from './pack-reading-dto';
+import { photoDto } from './photo-dto';
 import { repairBlock } from './repair-block';
 import { repairFacts, type RepairFacts } from './repair-facts';
 import { loadRepairFile, type RepairFile } from './repair-file';
@@ -137,6 +139,8 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
     charges: file.charges.map((charge) => chargeCard(charge, now)),
     removed: removedDto(file),
     wait: file.waits.map((wait) => waitDto(file, wait)),
+    photos: file.photos.map((photo) => photoDto(file, photo)),
+    conditions: moduleConditions(file),
     expectedAfterFit: expectedAfterFit(file, facts),
     forecast: forecastOf(file, facts),
     bookedBy: personRef(people, repair.bookedById)!,
@@ -155,6 +159,14 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
             at: toInstant(repair.deletedAt),
             by: personRef(people, repair.deletedById)!,
             reason: repair.deleteReason ?? '',
+          },
+    erased:
+      repair.erasedAt === null
+        ? null
+        : {
+            at: toInstant(repair.erasedAt),
+            by: personRef(people, repair.erasedById)!,
+            reason: repair.eraseReason ?? '',
           },
   };
 }

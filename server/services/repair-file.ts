@@ -1,6 +1,7 @@
 import type { EntityManager } from 'typeorm';
 import type { ModuleType } from '../entities/module-type';
 import type { PackReading } from '../entities/pack-reading';
+import type { Photo } from '../entities/photo';
 import type { RemovedModule } from '../entities/removed-module';
 import type { Repair } from '../entities/repair';
 import type { RepairWait } from '../entities/repair-wait';
@@ -11,6 +12,7 @@ import { sparesById, typesById } from '../repositories/charge-stock.repository';
 import { listPackTypes } from '../repositories/pack-types.repository';
 import {
   peopleOfRepairs,
+  photosOfRepairs,
   readingsOfRepairs,
   removedOfRepairs,
   sourcesOfRepairs,
@@ -28,6 +30,9 @@ export interface RepairFile extends Bench {
   sources: SecondSource[];
   removed: RemovedModule[];
   waits: RepairWait[];
+  photos: Photo[];
+  /** The spares that photos show, by id. */
+  photoSpares: Map<string, Spare>;
   charges: ChargeFile[];
   /** Who has fitted the module of a charge, by the charge's id. */
   fitters: Map<string, string>;
@@ -53,6 +58,7 @@ export async function loadRepairFiles(
   const readings = await readingsOfRepairs(manager, workshopId, ids);
   const sources = await sourcesOfRepairs(manager, workshopId, ids);
   const removed = await removedOfRepairs(manager, workshopId, ids);
+  const photos = await photosOfRepairs(manager, workshopId, ids);
   const waits = await waitsOfRepairs(manager, workshopId, ids);
   const charges = await listChargesOfRepairs(manager, workshopId, ids);
   const chargeFiles = await loadFiles(manager, workshopId, charges, around);
@@ -60,7 +66,11 @@ export async function loadRepairFiles(
   const fitters = await fittersOf(manager, workshopId, fitted);
   const packTypes = new Map((await listPackTypes(manager, workshopId)).map((type) => [type.id, type.name]));
   const types = await typesById(manager, workshopId, given(repairs.map(({ moduleTypeId }) => moduleTypeId)));
-  const spares = await sparesById(manager, workshopId, given(repairs.map(({ spareId }) => spareId)));
+  const spares = await sparesById(
+    manager,
+    workshopId,
+    given([...repairs, ...[...photos.values()].flat()].map(({ spareId }) => spareId)),
+  );
   return repairs.map((repair) => ({
     ...around,
     repair,
@@ -69,6 +79,8 @@ export async function loadRepairFiles(
     sources: sources.get(repair.id) ?? [],
     removed: removed.get(repair.id) ?? [],
     waits: waits.get(repair.id) ?? [],
+    photos: photos.get(repair.id) ?? [],
+    photoSpares: spares,
     charges: chargeFiles.filter(({ charge }) => charge.repairId === repair.id),
     fitters,
     packTypeName: packTypes.get(repair.packTypeId ?? '') ?? null,

@@ -13,6 +13,7 @@ import type {
   SecondSourceInput,
   TakeTargetInput,
 } from '@/shared/contract/pack-reading';
+import { photoField, type PhotoNoteInput } from '@/shared/contract/photo';
 import type {
   CandidateDto,
   ChangeRepairInput,
@@ -25,6 +26,7 @@ import type {
 } from '@/shared/contract/repair';
 import { api } from './api';
 import { roots, type Root } from './query-keys';
+import { saveFile } from './save-file';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
@@ -174,4 +176,52 @@ export const useCorrectWait = () =>
     ({ id, rev, waitId, ...input }: CorrectWaitInput & RepairAct & { waitId: string }) =>
       api.patch<RepairPageDto>(`/repairs/${id}/wait/${waitId}`, input, { rev }),
     [...touched, roots.waits],
+  );
+
+/** A chosen picture; `mark` tells two of them apart, which JSON cannot. */
+export interface PhotoToSend {
+  id: string;
+  file: Blob;
+  mark: string;
+  onSent: (share: number) => void;
+}
+
+export const useAddPhoto = () =>
+  useRepairWrite(({ id, file, onSent }: PhotoToSend, idempotencyKey) => {
+    const form = new FormData();
+    form.append(photoField, file, 'photo');
+    return api.upload<RepairPageDto>(`/repairs/${id}/photos`, form, { idempotencyKey, onSent });
+  });
+
+/** What is seen may set a spare aside and take a waiting charge off. */
+export const useNotePhoto = () =>
+  useRepairWrite(
+    ({ id, rev, ...input }: PhotoNoteInput & RepairAct) => api.patch<RepairPageDto>(`/photos/${id}`, input, { rev }),
+    withCharges,
+  );
+
+export const useRemovePhoto = () =>
+  useRepairWrite(({ id, rev }: RepairAct) => api.delete<RepairPageDto>(`/photos/${id}`, { rev }));
+
+/** Where a photo's picture is. */
+export const photoAddress = (id: string, part: 'picture' | 'thumbnail'): string =>
+  `/api/photos/${id}${part === 'thumbnail' ? '/thumbnail' : ''}`;
+
+/** Saves the repairs of a list as CSV on this device; without a state all but the deleted ones. */
+export const useSaveRepairs = () =>
+  useWrite<RepairFilter>({
+    send: async (filter) => saveFile(await api.blob('/repairs.csv', { query: { ...filter } }), 'repairs.csv'),
+  });
+
+/** Saves everything that is kept of the customer of a repair as a file on this device. */
+export const useSaveCustomerData = () =>
+  useWrite<string>({
+    send: async (id) => saveFile(await api.blob(`/repairs/${id}/customer.json`), 'customer-data.json'),
+  });
+
+export const useEraseCustomer = () =>
+  useRepairWrite(
+    ({ id, reason }: { id: string; reason: string }) =>
+      api.post<RepairPageDto>(`/repairs/${id}/customer/erase`, { reason }),
+    [...touched, roots.search],
   );

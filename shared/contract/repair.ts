@@ -4,6 +4,7 @@ import { id, instant, optionalInstant, optionalText, reason, text, type Instant,
 import type { ChargeCardDto } from './charge';
 import { packSchema, type PackDto } from './pack';
 import type { ComputedTargetDto, PackReadingDto, SecondSourceDto, TargetDto } from './pack-reading';
+import type { ModuleConditionDto, PhotoDto } from './photo';
 import type { Band } from './plan';
 
 /** The seven steps of the strip, in their order. */
@@ -92,7 +93,7 @@ export type RepairState = 'open' | 'handed-over' | 'archived' | 'deleted';
 
 /** What keeps a repair from going on. */
 export interface RepairBlock {
-  code: 'sources-disagree' | 'module-unknown' | 'check-outside' | 'charge-odd';
+  code: 'sources-disagree' | 'module-condition' | 'module-unknown' | 'check-outside' | 'charge-odd';
   /** 'The pack says module 17, your meter says 18.' */
   text: string;
   /** Who may decide; null: anybody. */
@@ -167,12 +168,18 @@ export interface RepairDto extends RepairCardDto, Omit<RepairInput, 'number' | '
   charges: ChargeCardDto[];
   removed: RemovedModuleDto[];
   wait: RepairWaitDto[];
+  /** Newest first. */
+  photos: PhotoDto[];
+  /** What the photos show of its modules; the worst first. */
+  conditions: ModuleConditionDto[];
   /** Spread expected after the fit, mV, by the spare's reading or its check. */
   expectedAfterFit: { low: number; likely: number; high: number } | null;
   forecast: BalanceForecastDto | null;
   bookedBy: PersonRef;
   handedOver: { at: Instant; by: PersonRef; note: string | null } | null;
   deleted: { at: Instant; by: PersonRef; reason: string } | null;
+  /** The customer's name and contact were erased. */
+  erased: { at: Instant; by: PersonRef; reason: string } | null;
 }
 
 export interface RepairPageDto extends RepairDto {

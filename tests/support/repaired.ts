@@ -1,6 +1,7 @@
 /** Repairs of a furnished workshop, made over the API: one whose sources disagree, one that waits, one over, one deleted. */
 import type { PackTypeDto } from '@/shared/contract/pack';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { twoHalves } from './pictures';
 import type { TestAgent } from './server';
 
 export interface Repaired {
@@ -15,6 +16,8 @@ export interface Repaired {
   waitingRev: number;
   waitingReadingId: string;
   waitId: string;
+  /** Of the first one. */
+  photoId: string;
   handedOverId: string;
   deletedId: string;
 }
@@ -93,6 +96,10 @@ export async function addRepairs(
 
   const first = await read(await book({ personIds: [personId] }));
   const packReadingId = first.readings[0]!.id;
+  const jpeg = await twoHalves(40, 20).jpeg().toBuffer();
+  const uploaded = await technician
+    .upload(`/api/repairs/${first.id}/photos`, 'photo', jpeg, 'photo.jpg')
+    .set('Idempotency-Key', newKey());
   const disagreeing = await posted(
     technician,
     `/api/repairs/${first.id}/second-source`,
@@ -121,6 +128,7 @@ export async function addRepairs(
     waitingRev: waiting.rev,
     waitingReadingId,
     waitId: waiting.wait[0]!.id,
+    photoId: (uploaded.body as RepairPageDto).photos[0]!.id,
     handedOverId: third.id,
     deletedId: fourth.id,
   };

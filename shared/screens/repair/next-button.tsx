@@ -14,12 +14,14 @@ export function NextButton({
   offline,
   onGo,
   onHandOver,
+  onRemoved,
 }: {
   repair: RepairDto;
   mayDecide: boolean;
   offline: boolean;
   onGo: (path: string) => void;
   onHandOver: () => void;
+  onRemoved: () => void;
 }) {
   const archive = useArchiveRepair();
   const restore = useRestoreRepair();
@@ -37,6 +39,7 @@ export function NextButton({
   const press = () => {
     if (next.kind === 'go') onGo(next.path);
     else if (next.kind === 'hand-over') onHandOver();
+    else if (next.kind === 'removed') onRemoved();
     else if (next.kind === 'restore') restore.mutate({ id: repair.id });
     else archive.mutate({ id: repair.id, archived: next.kind === 'archive' });
   };

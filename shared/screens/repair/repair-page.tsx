@@ -28,7 +28,9 @@ import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { Surface } from '@/shared/ui/theme/surface';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+import { CustomerPart } from './customer-part';
 import { NextButton } from './next-button';
+import { PhotosPart } from './photos-part';
 import { RepairMenu } from './repair-menu';
 import { RepairSheets, type OpenSheet } from './repair-sheets';
 
@@ -65,6 +67,7 @@ export function RepairPage({
       offline={offline}
       onGo={onGo}
       onHandOver={() => setSheet({ kind: 'hand-over' })}
+      onRemoved={() => setSheet({ kind: 'removed' })}
     />
   );
   const readings = (
@@ -78,6 +81,7 @@ export function RepairPage({
   );
   const tail = (
     <>
+      <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />
       <RemovedPart removed={repair.removed} now={now} />
       <WaitPart
         waits={repair.wait}
@@ -86,8 +90,13 @@ export function RepairPage({
       />
     </>
   );
+<<<<<<< HEAD
   const booked = Date.parse(repair.bookedAt);
   const since = `${daysBetween(dayOf(booked, zone), dayOf(now, zone)) === 0 ? 'today ' : ''}${moment(booked, zone, now, marks)}`;
+=======
+  const customer = <CustomerPart repair={repair} offline={offline} />;
+  const since = dateLong(Date.parse(repair.bookedAt), zone);
+>>>>>>> issue4photos
   return (
     <Screen
       header={
@@ -120,6 +129,7 @@ export function RepairPage({
               <FactsPart repair={repair} now={now} />
               {wide ? readings : null}
               {wide ? tail : null}
+              {wide ? customer : null}
             </View>
           }
           work={
@@ -149,6 +159,7 @@ export function RepairPage({
                 {readings}
                 {tail}
                 <EventsPart events={repair.events} now={now} />
+                {customer}
               </View>
             )
           }

@@ -7,7 +7,7 @@ import { presentStep, standing } from './repair-words';
 export type RepairSheet = 'hand-over' | 'removed' | 'delete' | 'wait' | 'set-aside';
 export type RepairNext =
   | { kind: 'go'; title: string; path: string }
-  | { kind: 'hand-over' | 'archive' | 'unarchive' | 'restore'; title: string };
+  | { kind: 'hand-over' | 'removed' | 'archive' | 'unarchive' | 'restore'; title: string };
 
 /** @param mayDecide whether this person may decide between two sources */
 export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext {
@@ -19,6 +19,7 @@ export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext 
   const { block, charge } = repair;
   if (block?.code === 'sources-disagree')
     return go(mayDecide ? 'Decide which module it is' : 'Look at the two sources', `${page}/second-source`);
+  if (block?.code === 'module-condition') return { kind: 'removed', title: 'Record what became of the module' };
   if (block?.code === 'module-unknown') return go('Enter the second source', `${page}/second-source`);
   const step = presentStep(repair.steps)?.step ?? null;
   switch (step) {

@@ -34,6 +34,7 @@ export function packWords({ groupCount, moduleCount, groupsPerModule }: RepairDt
 
 const blockWords: Record<RepairBlock['code'], string> = {
   'sources-disagree': 'Must decide',
+  'module-condition': 'Look at a module',
   'module-unknown': 'No module found',
   'check-outside': 'Outside',
   'charge-odd': 'Odd readings',

@@ -5,6 +5,7 @@
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from '@/tests/support/forms';
 import type { Furnished } from '@/tests/support/furnished';
 import { packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
+import { twoHalves } from '@/tests/support/pictures';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
 
@@ -12,6 +13,8 @@ export interface Fit {
   /** Path parameters. */
   params?: Record<string, string>;
   body?: object;
+  /** What is uploaded, where the route takes a file. */
+  file?: Buffer;
   query?: string;
   /** Revision of what is changed; 1 where it is not said. */
   rev?: number;
@@ -45,6 +48,10 @@ const repair =
     body: body(f),
     rev: of === 'repairId' ? f.repairs.repairRev : f.repairs.waitingRev,
   });
+const jpeg = await twoHalves(40, 20).jpeg().toBuffer();
+const photo =
+  (body?: object) =>
+  (f: Furnished): Fit => ({ params: { id: f.repairs.photoId }, body });
 const resistor = { name: 'One more', ohm: '0.2', maxWatts: '25' };
 const meter = { name: 'One more', offsetMillivolts: '1', checkedAt: null };
 
@@ -264,6 +271,20 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { from: '2026-06-09T09:00:00Z', to: null, reason: 'The lid was off earlier.' },
     rev: f.repairs.waitingRev,
   })),
+
+  'POST /api/repairs/:id/photos': technician((f) => ({ params: { id: f.repairs.repairId }, file: jpeg })),
+  'GET /api/photos/:id': technician(photo()),
+  'GET /api/photos/:id/thumbnail': technician(photo()),
+  'PATCH /api/photos/:id': technician(
+    photo({ caption: 'The lower edge', seen: 'damage', modulePosition: '2', spareId: null }),
+  ),
+  'DELETE /api/photos/:id': technician(photo()),
+
+  'GET /api/repairs.csv': foreman(),
+  'GET /api/repairs/:id/customer.json': manager(repair()),
+  'POST /api/repairs/:id/customer/erase': manager(repair(() => ({ reason: 'Asked for by the customer.' }))),
+
+  'GET /api/search': technician(() => ({ query: 'q=van' })),
 
   'GET /api/board': technician(),
   'GET /api/alerts': technician(),

@@ -1,0 +1,54 @@
+/** The files of photos. Their names are random and made here: nothing a client sends ever becomes part of a path. */
+import { randomBytes } from 'node:crypto';
+import fs from 'node:fs/promises';
+import path from 'node:path';
+import type { Config } from '../config';
+import { photoFolder } from '../data-files';
+import type { TakenPhoto } from './photo-image';
+
+type Kept = Pick<Config, 'dataDir'>;
+export type PhotoPart = 'picture' | 'thumbnail';
+
+const endings: Record<PhotoPart, string> = { picture: '.jpg', thumbnail: '.thumb.jpg' };
+const pathOf = ({ dataDir }: Kept, file: string, part: PhotoPart): string =>
+  path.join(photoFolder(dataDir), `${file}${endings[part]}`);
+
+/** Writes through to the disk: the row that names the file must not outlive it. */
+async function write(to: string, bytes: Buffer): Promise<void> {
+  const handle = await fs.open(to, 'wx', 0o600);
+  try {
+    await handle.writeFile(bytes);
+    await handle.sync();
+  } finally {
+    await handle.close();
+  }
+}
+
+/** Keeps a picture and its thumbnail, both or none. @returns their name */
+export async function keepPhoto(config: Kept, photo: Pick<TakenPhoto, PhotoPart>): Promise<string> {
+  await fs.mkdir(photoFolder(config.dataDir), { recursive: true, mode: 0o700 });
+  const file = randomBytes(16).toString('hex');
+  try {
+    await write(pathOf(config, file, 'picture'), photo.picture);
+    await write(pathOf(config, file, 'thumbnail'), photo.thumbnail);
+  } catch (error) {
+    await dropPhoto(config, file);
+    throw error;
+  }
+  return file;
+}
+
+/** Removes both; one that is gone already is no error. */
+export async function dropPhoto(config: Kept, file: string): Promise<void> {
+  for (const part of ['picture', 'thumbnail'] as const) await fs.rm(pathOf(config, file, part), { force: true });
+}
+
+/** Null: the file is gone. */
+export async function readPhoto(config: Kept, file: string, part: PhotoPart): Promise<Buffer | null> {
+  try {
+    return await fs.readFile(pathOf(config, file, part));
+  } catch (error) {
+    if ((error as NodeJS.ErrnoException).code === 'ENOENT') return null;
+    throw error;
+  }
+}
