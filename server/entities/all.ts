@@ -1,4 +1,5 @@
 /** All entities, listed: globs break in a bundle. */
+import { AdvisedItem } from './advised-item';
 import { Alert } from './alert';
 import { Channel } from './channel';
 import { ChannelHold } from './channel-hold';
@@ -60,6 +61,7 @@ export const entities = [
   PackReading,
   SecondSource,
   RemovedModule,
+  AdvisedItem,
   RepairWait,
   RepairEvent,
   Wall,

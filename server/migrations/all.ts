@@ -7,6 +7,7 @@ import { SpareCapacity1765000000000 } from './1765000000000-spare-capacity';
 import { Behaviours1765100000000 } from './1765100000000-behaviours';
 import { ReadingPlace1765200000000 } from './1765200000000-reading-place';
 import { Repairs1765300000000 } from './1765300000000-repairs';
+import { Advised1765500000000 } from './1765500000000-advised';
 
 export const migrations = [
   Initial1764600000000,
@@ -17,4 +18,5 @@ export const migrations = [
   Behaviours1765100000000,
   ReadingPlace1765200000000,
   Repairs1765300000000,
+  Advised1765500000000,
 ];

@@ -1,4 +1,5 @@
 import type { EntityManager } from 'typeorm';
+import type { AdvisedItem } from '../entities/advised-item';
 import type { ModuleType } from '../entities/module-type';
 import type { PackReading } from '../entities/pack-reading';
 import type { RemovedModule } from '../entities/removed-module';
@@ -10,6 +11,7 @@ import { notFound } from '../errors/domain-error';
 import { sparesById, typesById } from '../repositories/charge-stock.repository';
 import { listPackTypes } from '../repositories/pack-types.repository';
 import {
+  advisedOfRepairs,
   peopleOfRepairs,
   readingsOfRepairs,
   removedOfRepairs,
@@ -27,6 +29,8 @@ export interface RepairFile extends Bench {
   readings: PackReading[];
   sources: SecondSource[];
   removed: RemovedModule[];
+  /** The first advised first. */
+  advised: AdvisedItem[];
   waits: RepairWait[];
   charges: ChargeFile[];
   /** Who has fitted the module of a charge, by the charge's id. */
@@ -53,6 +57,7 @@ export async function loadRepairFiles(
   const readings = await readingsOfRepairs(manager, workshopId, ids);
   const sources = await sourcesOfRepairs(manager, workshopId, ids);
   const removed = await removedOfRepairs(manager, workshopId, ids);
+  const advised = await advisedOfRepairs(manager, workshopId, ids);
   const waits = await waitsOfRepairs(manager, workshopId, ids);
   const charges = await listChargesOfRepairs(manager, workshopId, ids);
   const chargeFiles = await loadFiles(manager, workshopId, charges, around);
@@ -68,6 +73,7 @@ export async function loadRepairFiles(
     readings: readings.get(repair.id) ?? [],
     sources: sources.get(repair.id) ?? [],
     removed: removed.get(repair.id) ?? [],
+    advised: advised.get(repair.id) ?? [],
     waits: waits.get(repair.id) ?? [],
     charges: chargeFiles.filter(({ charge }) => charge.repairId === repair.id),
     fitters,
