@@ -1,5 +1,5 @@
 /** The hand-over sheet (look §12): the story on the first page, every group and the signatures on the last. */
-import { standingLine } from '@/shared/contract/papers';
+import { standingLine } from '@/shared/contract/standing-line';
 import type { HandOverContent, NamedValue, PackPicture, ReadingRow } from './hand-over-content';
 import { drawPackPicture, pictureHeight, pictureScale, type PictureScale } from './pack-picture';
 import { bytesOf, linesOf, put } from './page';

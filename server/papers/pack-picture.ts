@@ -92,12 +92,13 @@ export function drawPackPicture(
       .lineTo(box.x + box.width + 1, foot - 6.5)
       .stroke();
   pdf.fillColor('black');
-  named(count).forEach((group, place, all) => {
+  named(count).forEach((group) => {
     const text = `G${group + 1}`;
     const middle = left + (group + 0.5) * pitch;
     const width = widthOf(pdf, text, small);
-    const x = Math.min(place === 0 ? left : middle - width / 2, box.x + box.width - width);
-    put(pdf, text, all.length === 1 ? middle - width / 2 : x, foot + 11, small);
+    // Under its bar, but never out of the picture.
+    const x = Math.min(Math.max(left, middle - width / 2), box.x + box.width - width);
+    put(pdf, text, x, foot + 11, small);
   });
   if (call)
     drawCall(pdf, call, { left, right: box.x + box.width, top: box.y, pitch, gap }, (group) =>

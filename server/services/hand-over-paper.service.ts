@@ -182,9 +182,12 @@ function footnotes(
     const meter = file.meters.get(reading.meterId ?? '');
     return meter ? `the meter ${meter.name}` : (reading.instrument ?? 'the pack’s own instrument');
   };
-  const read = [
-    ...(before === null ? [] : [`Before read with ${instrument(before)}.`]),
-    ...(after === null ? [] : [`After read with ${instrument(after)}.`]),
-  ];
+  const both = before !== null && after !== null && instrument(before) === instrument(after);
+  const read = both
+    ? [`Both read with ${instrument(before)}.`]
+    : [
+        ...(before === null ? [] : [`Before read with ${instrument(before)}.`]),
+        ...(after === null ? [] : [`After read with ${instrument(after)}.`]),
+      ];
   return [[...star, ...read].join(' ')].filter((line) => line !== '');
 }

@@ -97,7 +97,7 @@ export function changedWords(file: RepairFile, steps: readonly RepairStepDto[], 
 
 /** What was advised, and what became of it: the customer's name where it was agreed to. */
 export function advisedWords({ advised }: RepairFile, words: PaperWords): NamedValue[] {
-  if (advised.length === 0) return [{ name: 'Nothing', value: '' }];
+  if (advised.length === 0) return [{ name: 'Advice', value: 'none' }];
   return advised.map(({ text, outcome, detail, agreedBy, agreedAt }) => {
     const agreed =
       agreedBy === null || agreedAt === null

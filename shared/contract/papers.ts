@@ -7,7 +7,3 @@ export const paperQuerySchema = z.object({
   decimal: z.optional(z.enum(['point', 'comma'])),
 });
 export type PaperQuery = z.infer<typeof paperQuerySchema>;
-
-/** The line that stands on every plan and at the foot of every sheet. */
-export const standingLine =
-  'An aid to trained people. The maker’s limits, your risk assessment and local codes come first.';

@@ -1,5 +1,6 @@
 /** What stands in a PDF, by a reader that had no part in writing it. */
-import { getDocument, OPS } from 'pdfjs-dist/legacy/build/pdf.mjs';
+import { inflateSync } from 'node:zlib';
+import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
 
 export interface ReadPage {
   /** Points. */
@@ -43,10 +44,26 @@ export async function readPdf(bytes: Buffer): Promise<ReadPage[]> {
   return pages;
 }
 
-/** Every rectangle that was filled with the paths of a page's own operators: x, y from the top, width, height, in points. */
-export async function pdfOperators(bytes: Buffer) {
-  const file = await getDocument({ data: new Uint8Array(bytes), verbosity: 0 }).promise;
-  const list = await (await file.getPage(1)).getOperatorList();
-  await file.destroy();
-  return { list, OPS };
+export interface Box {
+  x: number;
+  y: number;
+  width: number;
+  height: number;
+}
+
+/** Every box that the pages' own operators name, in points from the top left of the page. */
+export function drawnBoxes(bytes: Buffer): Box[] {
+  const file = bytes.toString('latin1');
+  return [...file.matchAll(/stream\r?\n([\s\S]*?)\nendstream/g)].flatMap(([, stream = '']) => {
+    let content: string;
+    try {
+      content = inflateSync(Buffer.from(stream, 'latin1')).toString('latin1');
+    } catch {
+      return [];
+    }
+    return [...content.matchAll(/(-?[\d.]+) (-?[\d.]+) (-?[\d.]+) (-?[\d.]+) re\b/g)].map(([, ...numbers]) => {
+      const [x = 0, y = 0, width = 0, height = 0] = numbers.map(Number);
+      return { x, y, width, height };
+    });
+  });
 }

@@ -15,6 +15,8 @@ export interface Repaired {
   waitingRev: number;
   waitingReadingId: string;
   waitId: string;
+  /** Advised with the repair that waits. */
+  advisedId: string;
   handedOverId: string;
   deletedId: string;
 }
@@ -67,6 +69,14 @@ export const secondSourceForm = (readingId: string, change: object = {}) => ({
   ...change,
 });
 
+export const advisedForm = (change: object = {}) => ({
+  text: 'Coolant of the pack',
+  outcome: 'open',
+  detail: '',
+  agreedBy: '',
+  ...change,
+});
+
 let keys = 0;
 const newKey = (): string => `repairing-key-${(keys += 1)}`;
 
@@ -106,7 +116,12 @@ export async function addRepairs(
     toleranceMillivolts: '5',
     reason: null,
   });
-  const waiting = await posted(technician, `/api/repairs/${second.id}/spare`, { spareId });
+  await posted(technician, `/api/repairs/${second.id}/spare`, { spareId });
+  const waiting = await posted(
+    technician,
+    `/api/repairs/${second.id}/advised`,
+    advisedForm({ text: `${name}’s advice` }),
+  );
   const third = await book();
   await posted(technician, `/api/repairs/${third.id}/hand-over`, { note: `${name}’s customer took it along` });
   const fourth = await book();
@@ -121,6 +136,7 @@ export async function addRepairs(
     waitingRev: waiting.rev,
     waitingReadingId,
     waitId: waiting.wait[0]!.id,
+    advisedId: waiting.advised[0]!.id,
     handedOverId: third.id,
     deletedId: fourth.id,
   };

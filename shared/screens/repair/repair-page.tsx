@@ -27,6 +27,7 @@ import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { Surface } from '@/shared/ui/theme/surface';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+import { HandOverPart } from './hand-over-part';
 import { NextButton } from './next-button';
 import { RepairMenu } from './repair-menu';
 import { RepairSheets, type OpenSheet } from './repair-sheets';
@@ -48,6 +49,7 @@ export function RepairPage({
   const wide = useBreakpoint() === 'wide';
   const offline = useLink().state === 'down';
   const gate = useGate('repair:decide');
+  const mayAdvise = useGate('repair:write').may;
   const [menu, setMenu] = useState(false);
   const [sheet, setSheet] = useState<OpenSheet | null>(null);
   const [chosen, setChosen] = useState<string | null>(null);
@@ -78,6 +80,7 @@ export function RepairPage({
   const tail = (
     <>
       <RemovedPart removed={repair.removed} now={now} />
+      <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
       <WaitPart
         waits={repair.wait}
         now={now}

@@ -31,7 +31,16 @@ export const repairOf = (more: Partial<RepairPageDto> = {}): RepairPageDto => ({
     ...{ moduleTypeName: '2-series 66 Ah', moduleCount: 2 },
   },
   steps: repairSteps.map((step) => ({ step, state: 'to-come', at: null, by: null })),
-  ...{ computed: null, target: null, spare: null, charges: [], removed: [], wait: [], expectedAfterFit: null },
+  ...{
+    computed: null,
+    target: null,
+    spare: null,
+    charges: [],
+    removed: [],
+    advised: [],
+    wait: [],
+    expectedAfterFit: null,
+  },
   ...{ forecast: null, bookedBy: by, handedOver: null, deleted: null, events: [] },
   ...more,
 });

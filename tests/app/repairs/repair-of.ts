@@ -71,6 +71,7 @@ export function repairOf(step: RepairStep | null, more: Partial<RepairPageDto> =
     spare: null,
     charges: [],
     removed: [],
+    advised: [],
     wait: [],
     expectedAfterFit: null,
     forecast: null,

@@ -5,6 +5,7 @@ import { useNow } from '@/shared/client/clock';
 import { useGate } from '@/shared/client/gate';
 import { useRepair } from '@/shared/client/repairs';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { HandOverPart } from '@/shared/screens/repair/hand-over-part';
 import { millivolts } from '@/shared/ui/format/quantities';
 import { fitVerdict, forecastWords, spreadLog } from '@/shared/ui/pack-reading/prove-words';
 import { SpreadBars } from '@/shared/ui/pack-reading/spread-bars';
@@ -43,7 +44,10 @@ export default function Prove() {
       {!gate.may ? (
         <Forbidden what="Repairs are read" roles={gate.roles} people={gate.people} />
       ) : repair.data ? (
-        <Proof repair={repair.data} onRead={() => router.push(`${page}/reading` as Href)} />
+        <View style={{ rowGap: 24 }}>
+          <Proof repair={repair.data} onRead={() => router.push(`${page}/reading` as Href)} />
+          <HandOver repair={repair.data} />
+        </View>
       ) : repair.isError ? (
         <ErrorState
           failed="The repair could not be read."
@@ -55,6 +59,11 @@ export default function Prove() {
       )}
     </Screen>
   );
+}
+
+function HandOver({ repair }: { repair: RepairPageDto }) {
+  const now = useNow(60_000);
+  return <HandOverPart repair={repair} now={now} mayWrite={useGate('repair:write').may} />;
 }
 
 /** Spread that a repair is proven at where no forecast names another, mV. */
