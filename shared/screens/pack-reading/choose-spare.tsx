@@ -5,8 +5,10 @@ import { useNow } from '@/shared/client/clock';
 import { useLink } from '@/shared/client/link';
 import { useModuleTypes } from '@/shared/client/module-types';
 import { useCandidates, useFreeSpare, useReserveSpare } from '@/shared/client/repairs';
+import { isScanned } from '@/shared/client/scanned-spare';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { ScanButton, type ScannedSpare } from '../scan/scan-button';
 import { useFormats } from '@/shared/ui/format/formats';
 import { tolerance, volts as voltsText } from '@/shared/ui/format/quantities';
 import { Button } from '@/shared/ui/primitives/button';
@@ -41,9 +43,20 @@ export function ChooseSpare({
   const window = type ? { lowVolts: type.dischargeLimitVolts, highVolts: type.chargeLimitVolts } : null;
   const plan = planHref(repair);
   const told = { onError: (error: Error) => setProblem(sentenceOf(error)) };
+  const scanned = (spare: ScannedSpare): string | null => {
+    const candidate = list.data?.find(({ spareId, label }) => isScanned(spare, { id: spareId, label }));
+    if (!candidate) return `${spare.label} is no spare of this pack’s type in stock. Scan another.`;
+    if (candidate.ruledOut) return `${candidate.label}: ${candidate.problems.join(' ') || 'it cannot be planned.'}`;
+    setProblem(null);
+    reserve.mutate({ id: repair.id, spareId: candidate.spareId }, told);
+    return null;
+  };
   return (
     <View style={{ rowGap: 14 }}>
       <Txt>{`Target ${voltsText(target.volts, marks)} ${tolerance(target.toleranceMillivolts / 1000)}`}</Txt>
+      {list.data && list.data.length > 0 ? (
+        <ScanButton disabled={offline || reserve.isPending} onSpare={scanned} />
+      ) : null}
       {repair.spare && plan ? (
         <View style={{ rowGap: 8 }}>
           <Txt bold>{`${repair.spare.label} is reserved for this repair.`}</Txt>
