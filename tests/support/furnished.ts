@@ -155,10 +155,10 @@ async function begin(server: TestServer, name: 'own' | 'other') {
 }
 
 /** A charge that is over, as the rested one would stand after its check and its fit. */
-async function addProven(server: TestServer, restedId: string, id: string): Promise<string> {
+async function addProven(server: TestServer, restedId: string, id: string, personId: string): Promise<string> {
   const { manager } = server.deps.dataSource;
   const rested = await manager.findOneByOrFail(Charge, { id: restedId });
-  const { workshopId, personId } = rested;
+  const { workshopId } = rested;
   const at = server.clock.now();
   await manager.insert(Charge, { ...rested, id, number: `${rested.number}-P`, stage: 'fitted', closedAt: at });
   const groups = [0, 1].map((group) => ({ group, volts: 3.968, deviationVolts: 0, within: true, ampHoursToGo: 0 }));
@@ -201,7 +201,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     clearedAt: null,
   };
   await server.deps.dataSource.manager.insert(Alert, alert);
-  const provenId = await addProven(server, ids.restedId, `${name}-proven`);
+  const provenId = await addProven(server, ids.restedId, `${name}-proven`, workshop.people.technician.id);
   const capacity: SpareCapacity = {
     id: `${name}-capacity`,
     workshopId: workshop.id,

@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, expect, test } from 'vitest';
-import { did, hour, makeBench, minute, seen, type Bench } from '../charges/bench';
+import { did, hour, makeBench, minute, type Bench } from '../charges/bench';
 import { arrival, chargedAndChecked, levelled, makeShop, stripOf, strip, taken, type Shop } from './shop';
 
 let bench: Bench;
@@ -127,7 +127,7 @@ test('a plan that is dropped is told, the wait goes on; a ready module put back 
   expect(page.events[0]!.text).toBe('dropped the plan of S-0417');
   expect([page.charge, page.waits, page.wait.length]).toEqual([null, true, 1]);
 
-  const checked = await chargedAndChecked((await shop.plan(page, spareId)).id);
+  const checked = await chargedAndChecked(bench, (await shop.plan(page, spareId)).id);
   expect((await shop.seen(page.id)).waits).toBe(false);
   bench.server.clock.advance(10 * minute);
   await did(bench, checked, 'shelve', { shelfPlace: 'D4' });
