@@ -1,4 +1,5 @@
 /** All entities, listed: globs break in a bundle. */
+import { AdvisedItem } from './advised-item';
 import { Alert } from './alert';
 import { Channel } from './channel';
 import { ChannelHold } from './channel-hold';
@@ -62,6 +63,7 @@ export const entities = [
   SecondSource,
   RemovedModule,
   Photo,
+  AdvisedItem,
   RepairWait,
   RepairEvent,
   Wall,

@@ -1,5 +1,6 @@
 /** Rows that may name a customer. */
 import { Like, type EntityManager } from 'typeorm';
+import { AdvisedItem } from '../entities/advised-item';
 import { IdempotencyKey } from '../entities/idempotency-key';
 import { Photo } from '../entities/photo';
 import { RemovedModule } from '../entities/removed-module';
@@ -11,14 +12,30 @@ import { RepairWait } from '../entities/repair-wait';
 export const allRepairs = (manager: EntityManager, workshopId: string): Promise<Repair[]> =>
   manager.find(Repair, { where: { workshopId }, order: { bookedAt: 'DESC', id: 'ASC' } });
 
-/** Rewrites every free text that hangs on a repair. @param cleaned what stands there in place of a text */
+/**
+ * Rewrites every free text that hangs on a repair.
+ *
+ * @param cleaned what stands there in place of a text
+ * @param nobody what stands in place of the name that a customer has typed as agreement
+ */
 export async function rewriteTexts(
   manager: EntityManager,
   workshopId: string,
   repairId: string,
   cleaned: (text: string) => string,
+  nobody: string,
 ): Promise<void> {
   const of = { workshopId, repairId };
+  for (const { id, text, detail, agreedBy } of await manager.findBy(AdvisedItem, of))
+    await manager.update(
+      AdvisedItem,
+      { workshopId, id },
+      {
+        text: cleaned(text),
+        detail: detail === null ? null : cleaned(detail),
+        agreedBy: agreedBy === null ? null : nobody,
+      },
+    );
   for (const { id, text } of await manager.findBy(RepairEvent, of))
     if (cleaned(text) !== text) await manager.update(RepairEvent, { workshopId, id }, { text: cleaned(text) });
   for (const { id, note } of await manager.findBy(RemovedModule, of))

@@ -7,7 +7,9 @@ import {
   setReadingAsideSchema,
   takeTargetSchema,
 } from '@/shared/contract/pack-reading';
+import { paperQuerySchema } from '@/shared/contract/papers';
 import {
+  advisedSchema,
   archiveRepairSchema,
   changeRepairSchema,
   correctWaitSchema,
@@ -18,6 +20,7 @@ import {
   repairsQuerySchema,
   reserveSpareSchema,
 } from '@/shared/contract/repair';
+import { addAdvised, changeAdvised, removeAdvised } from '../services/advised.service';
 import { candidates } from '../services/candidates.service';
 import { correctWait } from '../services/correct-wait.service';
 import {
@@ -27,6 +30,7 @@ import {
   recordRemoved,
   restoreRepair,
 } from '../services/finish-repair.service';
+import { handOverPaper } from '../services/hand-over-paper.service';
 import { addPackReading, setReadingAside } from '../services/pack-readings.service';
 import { addPackType, changePackType, packTypes } from '../services/pack-types.service';
 import { freeSpare, reserveSpare } from '../services/repair-spares.service';
@@ -35,6 +39,7 @@ import { repairsCsv } from '../services/repairs-csv.service';
 import { addRepair, changeBooked, repair, repairs } from '../services/repairs.service';
 import { addSecondSource, decideSource } from '../services/second-sources.service';
 import type { Policy, RoutesModule } from './define-route';
+import { sendPaper } from './send-paper';
 
 const read: Policy = { kind: 'capability', capability: 'repair:read' };
 const write: Policy = { kind: 'capability', capability: 'repair:write' };
@@ -177,6 +182,40 @@ export const repairsRoutes: RoutesModule = (route) => {
     body: removedModuleSchema,
     status: 201,
     handle: ({ deps, member, params, body, now }) => recordRemoved(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/advised',
+    policy: write,
+    body: advisedSchema,
+    status: 201,
+    handle: ({ deps, member, params, body, now }) => addAdvised(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'patch',
+    path: '/repairs/:id/advised/:itemId',
+    policy: write,
+    body: advisedSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) =>
+      changeAdvised(deps, member, { repairId: idOf(params), itemId: params.itemId ?? '' }, rev, body, now),
+  });
+  route({
+    method: 'delete',
+    path: '/repairs/:id/advised/:itemId',
+    policy: write,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) =>
+      removeAdvised(deps, member, { repairId: idOf(params), itemId: params.itemId ?? '' }, rev, now),
+  });
+  route({
+    method: 'get',
+    path: '/repairs/:id/hand-over.pdf',
+    policy: read,
+    query: paperQuerySchema,
+    limit: 'papers',
+    handle: async ({ deps, member, params, query, response }) =>
+      sendPaper(response, await handOverPaper(deps, member, idOf(params), query)),
   });
   route({
     method: 'post',

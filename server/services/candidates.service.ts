@@ -219,7 +219,8 @@ function distinct(channels: readonly ChannelParameters[]): ChannelParameters[] {
   return [...first.values()];
 }
 
-function agreementOf(type: ModuleType, spareAh: number, targetVolts: number): CandidateDto['agreement'] {
+/** How far a spare lies from its neighbours at full and at low charge, matched at the target. */
+export function agreementOf(type: ModuleType, spareAh: number, targetVolts: number): CandidateDto['agreement'] {
   const curve = curveOf(type);
   const found = orNull(() =>
     spareAgreement({

@@ -6,7 +6,12 @@ import type { Deps, Member } from '../deps';
 import type { Repair } from '../entities/repair';
 import { notFound } from '../errors/domain-error';
 import { allRepairs, forgetAnswersOfRepairs, rewriteTexts } from '../repositories/customers.repository';
-import { eventsOfRepairs, photosOfRepairs, removedOfRepairs } from '../repositories/repair-rows.repository';
+import {
+  advisedOfRepairs,
+  eventsOfRepairs,
+  photosOfRepairs,
+  removedOfRepairs,
+} from '../repositories/repair-rows.repository';
 import { findRepair, updateRepair } from '../repositories/repairs.repository';
 import { findWorkshop } from '../repositories/workshops.repository';
 import { withoutAnswer } from './idempotency.service';
@@ -49,6 +54,7 @@ export async function exportCustomer(deps: Deps, member: Member, id: string, now
   const ids = repairs.map((one) => one.id);
   const removed = await removedOfRepairs(manager, workshopId, ids);
   const photos = await photosOfRepairs(manager, workshopId, ids);
+  const advised = await advisedOfRepairs(manager, workshopId, ids);
   const events = await eventsOfRepairs(manager, workshopId, ids);
   return {
     exportedAt: toInstant(now),
@@ -66,6 +72,9 @@ export async function exportCustomer(deps: Deps, member: Member, id: string, now
       removed: (removed.get(one.id) ?? []).map(({ modulePosition, fate, note, at }) => ({
         ...{ modulePosition, fate, note, at: toInstant(at) },
       })),
+      advised: (advised.get(one.id) ?? []).map(({ text, outcome, detail, agreedBy, agreedAt }) => ({
+        ...{ text, outcome, detail, agreedBy, agreedAt: toOptionalInstant(agreedAt) },
+      })),
       photos: (photos.get(one.id) ?? []).map((photo) => ({
         ...{ at: toInstant(photo.at), caption: photo.caption, address: `/api/photos/${photo.id}` },
       })),
@@ -75,8 +84,9 @@ export async function exportCustomer(deps: Deps, member: Member, id: string, now
 }
 
 /** Takes what names the customer out of a text, in whatever case it was typed. */
-function cleanerOf(repairs: readonly Named[]): (text: string) => string {
-  const secrets = [...new Set(repairs.flatMap((one) => [one.customerName, one.customerContact]))]
+function cleanerOf(repairs: readonly Named[], agreedBy: readonly string[]): (text: string) => string {
+  const named = repairs.flatMap((one) => [one.customerName, one.customerContact]);
+  const secrets = [...new Set([...named, ...agreedBy])]
     .map((text) => text?.trim() ?? '')
     // One letter would be found everywhere, and tells nothing.
     .filter((text) => text.length > 1)
@@ -103,8 +113,18 @@ export async function eraseCustomer(
   const { workshopId, personId } = member;
   const { page, erased } = await inTransaction(deps, async (manager) => {
     const repair = await knownRepair(manager, workshopId, id);
-    const named = (await repairsOfCustomer(manager, workshopId, repair)).filter(isNamed);
-    const cleaned = cleanerOf(named);
+    const repairs = await repairsOfCustomer(manager, workshopId, repair);
+    const advised = await advisedOfRepairs(
+      manager,
+      workshopId,
+      repairs.map((one) => one.id),
+    );
+    const agreedBy = (one: Repair): string[] =>
+      (advised.get(one.id) ?? []).flatMap((item) =>
+        item.agreedBy === null || item.agreedBy === ERASED ? [] : [item.agreedBy],
+      );
+    const named = repairs.filter((one) => isNamed(one) || agreedBy(one).length > 0);
+    const cleaned = cleanerOf(named, named.flatMap(agreedBy));
     const cleanedOr = (text: string | null) => (text === null ? null : cleaned(text));
     for (const one of named) {
       await updateRepair(manager, workshopId, one.id, {
@@ -113,7 +133,7 @@ export async function eraseCustomer(
         ...{ deleteReason: cleanedOr(one.deleteReason), eraseReason: cleaned(reason) },
         ...{ erasedAt: now, erasedById: personId },
       });
-      await rewriteTexts(manager, workshopId, one.id, cleaned);
+      await rewriteTexts(manager, workshopId, one.id, cleaned, ERASED);
       const file = await loadRepairFile(manager, workshopId, one.id);
       await settleRepair(manager, file, now, personId, [{ text: 'customer’s data erased', at: now }]);
     }

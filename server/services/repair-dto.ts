@@ -2,6 +2,7 @@ import type { EntityManager } from 'typeorm';
 import type { PackDto } from '@/shared/contract/pack';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type {
+  AdvisedDto,
   RemovedModuleDto,
   RepairCardDto,
   RepairDto,
@@ -116,6 +117,18 @@ const removedDto = ({ people, removed }: RepairFile): RemovedModuleDto[] =>
     by: personRef(people, personId)!,
   }));
 
+const advisedDto = ({ people, advised }: RepairFile): AdvisedDto[] =>
+  advised.map(({ id, text, outcome, detail, agreedBy, agreedAt, at, personId }) => ({
+    id,
+    text,
+    outcome,
+    detail,
+    agreedBy,
+    agreedAt: toOptionalInstant(agreedAt),
+    at: toInstant(at),
+    by: personRef(people, personId)!,
+  }));
+
 /** A repair with all but its log. */
 export function repairDto(file: RepairFile, now: number): RepairDto {
   const { repair, people, type, spare, meters } = file;
@@ -138,6 +151,7 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
     spare: spare === null ? null : { id: spare.id, label: spare.label, shelfPlace: spare.shelfPlace },
     charges: file.charges.map((charge) => chargeCard(charge, now)),
     removed: removedDto(file),
+    advised: advisedDto(file),
     wait: file.waits.map((wait) => waitDto(file, wait)),
     photos: file.photos.map((photo) => photoDto(file, photo)),
     conditions: moduleConditions(file),

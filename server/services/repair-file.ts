@@ -1,4 +1,5 @@
 import type { EntityManager } from 'typeorm';
+import type { AdvisedItem } from '../entities/advised-item';
 import type { ModuleType } from '../entities/module-type';
 import type { PackReading } from '../entities/pack-reading';
 import type { Photo } from '../entities/photo';
@@ -11,6 +12,7 @@ import { notFound } from '../errors/domain-error';
 import { sparesById, typesById } from '../repositories/charge-stock.repository';
 import { listPackTypes } from '../repositories/pack-types.repository';
 import {
+  advisedOfRepairs,
   peopleOfRepairs,
   photosOfRepairs,
   readingsOfRepairs,
@@ -29,6 +31,8 @@ export interface RepairFile extends Bench {
   readings: PackReading[];
   sources: SecondSource[];
   removed: RemovedModule[];
+  /** The first advised first. */
+  advised: AdvisedItem[];
   waits: RepairWait[];
   photos: Photo[];
   /** The spares that photos show, by id. */
@@ -59,6 +63,7 @@ export async function loadRepairFiles(
   const sources = await sourcesOfRepairs(manager, workshopId, ids);
   const removed = await removedOfRepairs(manager, workshopId, ids);
   const photos = await photosOfRepairs(manager, workshopId, ids);
+  const advised = await advisedOfRepairs(manager, workshopId, ids);
   const waits = await waitsOfRepairs(manager, workshopId, ids);
   const charges = await listChargesOfRepairs(manager, workshopId, ids);
   const chargeFiles = await loadFiles(manager, workshopId, charges, around);
@@ -78,6 +83,7 @@ export async function loadRepairFiles(
     readings: readings.get(repair.id) ?? [],
     sources: sources.get(repair.id) ?? [],
     removed: removed.get(repair.id) ?? [],
+    advised: advised.get(repair.id) ?? [],
     waits: waits.get(repair.id) ?? [],
     photos: photos.get(repair.id) ?? [],
     photoSpares: spares,

@@ -15,6 +15,7 @@ import type {
 } from '@/shared/contract/pack-reading';
 import { photoField, type PhotoNoteInput } from '@/shared/contract/photo';
 import type {
+  AdvisedInput,
   CandidateDto,
   ChangeRepairInput,
   CorrectWaitInput,
@@ -147,6 +148,21 @@ export const useRecordRemoved = () =>
   useRepairWrite(
     ({ id, ...input }: RemovedModuleInput & { id: string }) => api.post<RepairPageDto>(`/repairs/${id}/removed`, input),
     withSpares,
+  );
+
+export const useAddAdvised = () =>
+  useRepairWrite(({ id, ...input }: AdvisedInput & { id: string }) =>
+    api.post<RepairPageDto>(`/repairs/${id}/advised`, input),
+  );
+
+export const useChangeAdvised = () =>
+  useRepairWrite(({ id, rev, itemId, ...input }: AdvisedInput & RepairAct & { itemId: string }) =>
+    api.patch<RepairPageDto>(`/repairs/${id}/advised/${itemId}`, input, { rev }),
+  );
+
+export const useRemoveAdvised = () =>
+  useRepairWrite(({ id, rev, itemId }: RepairAct & { itemId: string }) =>
+    api.delete<RepairPageDto>(`/repairs/${id}/advised/${itemId}`, { rev }),
   );
 
 /** Refused with what is missing, unless the note says why. */

@@ -1,7 +1,7 @@
 /** What is kept of a customer: taken out as a file, or erased while the technical record of the repairs stays. */
 import * as z from 'zod/mini';
 import { reason, type Instant } from './common';
-import type { ModuleFate } from './repair';
+import type { AdvisedOutcome, ModuleFate } from './repair';
 
 export const eraseCustomerSchema = z.object({ reason });
 export type EraseCustomerInput = z.infer<typeof eraseCustomerSchema>;
@@ -23,6 +23,13 @@ export interface CustomerExportDto {
     note: string | null;
     handOverNote: string | null;
     removed: { modulePosition: string; fate: ModuleFate; note: string | null; at: Instant }[];
+    advised: {
+      text: string;
+      outcome: AdvisedOutcome;
+      detail: string | null;
+      agreedBy: string | null;
+      agreedAt: Instant | null;
+    }[];
     photos: { at: Instant; caption: string | null; address: string }[];
     log: { at: Instant; text: string }[];
   }[];

@@ -67,6 +67,31 @@ export const removedModuleSchema = z
   );
 export type RemovedModuleInput = z.infer<typeof removedModuleSchema>;
 
+export const advisedOutcomes = ['open', 'done', 'booked', 'declined'] as const;
+export type AdvisedOutcome = (typeof advisedOutcomes)[number];
+export const advisedOutcomeNames: Record<AdvisedOutcome, string> = {
+  open: 'Not answered yet',
+  done: 'Done',
+  booked: 'Booked',
+  declined: 'Declined by the owner',
+};
+/** What was advised, and what became of it. What is declined carries the customer's name, typed as agreement. */
+export const advisedSchema = z
+  .object({
+    text: text('What is advised', 80),
+    outcome: z.enum(advisedOutcomes),
+    /** '8 September' */
+    detail: optionalText('The detail', 80),
+    agreedBy: optionalText('The customer’s name', 80),
+  })
+  .check(
+    z.refine((one) => one.outcome !== 'declined' || one.agreedBy !== null, {
+      message: 'Type the name of the customer who declined it.',
+      path: ['agreedBy'],
+    }),
+  );
+export type AdvisedInput = z.infer<typeof advisedSchema>;
+
 export const handOverRepairSchema = z.object({ note: optionalText('The note', 500) });
 export const archiveRepairSchema = z.object({ archived: z.boolean() });
 export const deleteRepairSchema = z.object({ reason });
@@ -138,6 +163,14 @@ export interface RemovedModuleDto extends RemovedModuleInput {
   by: PersonRef;
 }
 
+export interface AdvisedDto extends AdvisedInput {
+  id: string;
+  at: Instant;
+  by: PersonRef;
+  /** When the name was typed. */
+  agreedAt: Instant | null;
+}
+
 export interface RepairEventDto {
   id: string;
   at: Instant;
@@ -167,6 +200,8 @@ export interface RepairDto extends RepairCardDto, Omit<RepairInput, 'number' | '
   spare: { id: string; label: string; shelfPlace: string | null } | null;
   charges: ChargeCardDto[];
   removed: RemovedModuleDto[];
+  /** In the order in which it was advised. */
+  advised: AdvisedDto[];
   wait: RepairWaitDto[];
   /** Newest first. */
   photos: PhotoDto[];

@@ -18,6 +18,8 @@ export interface Repaired {
   waitId: string;
   /** Of the first one. */
   photoId: string;
+  /** Advised with the repair that waits. */
+  advisedId: string;
   handedOverId: string;
   deletedId: string;
 }
@@ -70,6 +72,14 @@ export const secondSourceForm = (readingId: string, change: object = {}) => ({
   ...change,
 });
 
+export const advisedForm = (change: object = {}) => ({
+  text: 'Coolant of the pack',
+  outcome: 'open',
+  detail: '',
+  agreedBy: '',
+  ...change,
+});
+
 let keys = 0;
 const newKey = (): string => `repairing-key-${(keys += 1)}`;
 
@@ -113,7 +123,12 @@ export async function addRepairs(
     toleranceMillivolts: '5',
     reason: null,
   });
-  const waiting = await posted(technician, `/api/repairs/${second.id}/spare`, { spareId });
+  await posted(technician, `/api/repairs/${second.id}/spare`, { spareId });
+  const waiting = await posted(
+    technician,
+    `/api/repairs/${second.id}/advised`,
+    advisedForm({ text: `${name}’s advice` }),
+  );
   const third = await book();
   await posted(technician, `/api/repairs/${third.id}/hand-over`, { note: `${name}’s customer took it along` });
   const fourth = await book();
@@ -129,6 +144,7 @@ export async function addRepairs(
     waitingReadingId,
     waitId: waiting.wait[0]!.id,
     photoId: (uploaded.body as RepairPageDto).photos[0]!.id,
+    advisedId: waiting.advised[0]!.id,
     handedOverId: third.id,
     deletedId: fourth.id,
   };

@@ -5,8 +5,10 @@ import { useNow } from '@/shared/client/clock';
 import { useLink } from '@/shared/client/link';
 import { useModuleTypes } from '@/shared/client/module-types';
 import { useCandidates, useFreeSpare, useReserveSpare } from '@/shared/client/repairs';
+import { isScanned } from '@/shared/client/scanned-spare';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { ScanButton, type ScannedSpare } from '../scan/scan-button';
 import { useFormats } from '@/shared/ui/format/formats';
 import { tolerance, volts as voltsText } from '@/shared/ui/format/quantities';
 import { Button } from '@/shared/ui/primitives/button';
@@ -46,6 +48,14 @@ export function ChooseSpare({
   const { charge } = repair;
   const plan = charge === null ? planHref(repair) : null;
   const told = { onError: (error: Error) => setProblem(sentenceOf(error)) };
+  const scanned = (spare: ScannedSpare): string | null => {
+    const candidate = list.data?.find(({ spareId, label }) => isScanned(spare, { id: spareId, label }));
+    if (!candidate) return `${spare.label} is no spare of this pack’s type in stock. Scan another.`;
+    if (candidate.ruledOut) return `${candidate.label}: ${candidate.problems.join(' ') || 'it cannot be planned.'}`;
+    setProblem(null);
+    reserve.mutate({ id: repair.id, spareId: candidate.spareId }, told);
+    return null;
+  };
   return (
     <StepScreen
       title="Choose a spare"
@@ -65,6 +75,9 @@ export function ChooseSpare({
     >
       <Txt>{`Target ${voltsText(target.volts, marks)} ${tolerance(target.toleranceMillivolts / 1000)}`}</Txt>
       {charge ? <Txt bold>{`${charge.spare.label} is on its charge for this repair, ${charge.number}.`}</Txt> : null}
+      {list.data && list.data.length > 0 ? (
+        <ScanButton disabled={offline || reserve.isPending} onSpare={scanned} />
+      ) : null}
       {repair.spare && plan ? (
         <View style={{ rowGap: 8 }}>
           <Txt bold>{`${repair.spare.label} is reserved for this repair.`}</Txt>

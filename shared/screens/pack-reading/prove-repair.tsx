@@ -4,6 +4,7 @@ import { useNow } from '@/shared/client/clock';
 import { useGate } from '@/shared/client/gate';
 import { useLink } from '@/shared/client/link';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { HandOverPart } from '@/shared/screens/repair/hand-over-part';
 import { HandOverSheet } from '@/shared/screens/repair/hand-over-sheet';
 import { millivolts } from '@/shared/ui/format/quantities';
 import { fitVerdict, forecastWords, spreadLog } from '@/shared/ui/pack-reading/prove-words';
@@ -93,6 +94,7 @@ export function ProveRepair({
       ) : null}
       {verdict ? <Txt tone={verdict.good ? 'ink' : 'alarm'}>{verdict.text}</Txt> : null}
       <SpreadBars log={log} aimMillivolts={aim} now={now} />
+      <HandOverPart repair={repair} now={now} mayWrite={gate.may} />
       {handsOver ? <HandOverSheet repair={repair} onClose={() => setHandsOver(false)} /> : null}
     </StepScreen>
   );

@@ -29,6 +29,7 @@ import { Screen } from '@/shared/ui/screen/screen';
 import { Surface } from '@/shared/ui/theme/surface';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 import { CustomerPart } from './customer-part';
+import { HandOverPart } from './hand-over-part';
 import { NextButton } from './next-button';
 import { PhotosPart } from './photos-part';
 import { RepairMenu } from './repair-menu';
@@ -51,6 +52,7 @@ export function RepairPage({
   const wide = useBreakpoint() === 'wide';
   const offline = useLink().state === 'down';
   const gate = useGate('repair:decide');
+  const mayAdvise = useGate('repair:write').may;
   const [menu, setMenu] = useState(false);
   const [sheet, setSheet] = useState<OpenSheet | null>(null);
   const [chosen, setChosen] = useState<string | null>(null);
@@ -83,6 +85,7 @@ export function RepairPage({
     <>
       <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />
       <RemovedPart removed={repair.removed} now={now} />
+      <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
       <WaitPart
         waits={repair.wait}
         now={now}
@@ -90,13 +93,9 @@ export function RepairPage({
       />
     </>
   );
-<<<<<<< HEAD
   const booked = Date.parse(repair.bookedAt);
   const since = `${daysBetween(dayOf(booked, zone), dayOf(now, zone)) === 0 ? 'today ' : ''}${moment(booked, zone, now, marks)}`;
-=======
   const customer = <CustomerPart repair={repair} offline={offline} />;
-  const since = dateLong(Date.parse(repair.bookedAt), zone);
->>>>>>> issue4photos
   return (
     <Screen
       header={

@@ -38,6 +38,7 @@ export const repairOf = (more: Partial<RepairPageDto> = {}): RepairPageDto => ({
     charges: [],
     removed: [],
     photos: [],
+    advised: [],
     conditions: [],
     wait: [],
     expectedAfterFit: null,

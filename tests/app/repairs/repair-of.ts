@@ -73,6 +73,7 @@ export function repairOf(step: RepairStep | null, more: Partial<RepairPageDto> =
     removed: [],
     photos: [],
     conditions: [],
+    advised: [],
     wait: [],
     expectedAfterFit: null,
     forecast: null,

@@ -15,10 +15,9 @@ import { routeFixtures, type Fit, type RouteFixture } from './route-fixtures';
 
 const noLimit = { points: 1_000_000, durationS: 1 };
 const limits = Object.fromEntries(
-  ['open', 'estimate', 'createWorkshop', 'join', 'wallCode', 'wallToken', 'wallGuess', 'signInDevice'].map((name) => [
-    name,
-    noLimit,
-  ]),
+  ['open', 'estimate', 'papers', 'createWorkshop', 'join', 'wallCode', 'wallToken', 'wallGuess', 'signInDevice'].map(
+    (name) => [name, noLimit],
+  ),
 );
 // With the demo on, so that its route is walked too.
 const server = await makeTestServer({ demo: true, limits });

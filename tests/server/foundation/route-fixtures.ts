@@ -6,6 +6,7 @@ import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareF
 import type { Furnished } from '@/tests/support/furnished';
 import { packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { twoHalves } from '@/tests/support/pictures';
+import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
 
@@ -199,6 +200,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { ...wish(f), optionId: f.optionId, topUpOf: f.chargeId, repairId: f.repairs.waitingRepairId },
   })),
   'GET /api/charges/:id': technician(charge()),
+  'GET /api/charges/:id/label.pdf': technician((f) => ({ params: { id: f.provenId } })),
   'DELETE /api/charges/:id': technician(charge()),
   'POST /api/charges/:id/checks': technician(charge(() => ({ code: 'isolation', answer: 'yes' }))),
   'POST /api/charges/:id/queue': technician(charge(() => ({ clipOnAt: null }))),
@@ -259,6 +261,17 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'POST /api/repairs/:id/removed': technician(
     repair(() => ({ modulePosition: '2', fate: 'scrap', note: '' }), 'waitingRepairId'),
   ),
+  'POST /api/repairs/:id/advised': technician(repair(() => advisedForm())),
+  'PATCH /api/repairs/:id/advised/:itemId': technician((f) => ({
+    params: { id: f.repairs.waitingRepairId, itemId: f.repairs.advisedId },
+    body: advisedForm({ outcome: 'booked' }),
+    rev: f.repairs.waitingRev,
+  })),
+  'DELETE /api/repairs/:id/advised/:itemId': technician((f) => ({
+    params: { id: f.repairs.waitingRepairId, itemId: f.repairs.advisedId },
+    rev: f.repairs.waitingRev,
+  })),
+  'GET /api/repairs/:id/hand-over.pdf': technician(repair()),
   'POST /api/repairs/:id/hand-over': technician(repair(() => ({ note: 'Taken along unfinished.' }))),
   'POST /api/repairs/:id/archive': technician((f) => ({
     params: { id: f.repairs.handedOverId },

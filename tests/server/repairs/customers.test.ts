@@ -26,6 +26,12 @@ beforeEach(async () => {
       note: `${name.toUpperCase()} agreed`,
     }),
   );
+  // Who agreed at the counter bears another name.
+  first = await taken(
+    shop.send(`repairs/${first.id}/advised`, {
+      ...{ text: 'Coolant hose', outcome: 'declined', detail: `${name} rings back`, agreedBy: 'Corin Vell' },
+    }),
+  );
   second = await shop.book({ ...of, customerName: ` ${name.toUpperCase()}` });
   namesake = await shop.book({ ...of, customerContact: 'another@quay.example.com' });
 });
@@ -50,7 +56,8 @@ test('a customer’s data is given out as one JSON file with both repairs, and w
   const data = answer.body as CustomerExportDto;
   expect([data.name, data.contact]).toEqual([name, contact]);
   expect(data.repairs.map(({ number }) => number)).toEqual([second.number, first.number]);
-  const { note, removed, log } = data.repairs[1]!;
+  const { note, removed, advised, log } = data.repairs[1]!;
+  expect(advised).toMatchObject([{ text: 'Coolant hose', outcome: 'declined', agreedBy: 'Corin Vell' }]);
   expect([note, removed[0]!.note]).toEqual([`Ring ${contact} before noon`, `${name.toUpperCase()} agreed`]);
   expect(log.map(({ text }) => text)).toContain(`booked Van of ${name}`);
 });
@@ -63,6 +70,7 @@ test('erasing takes name and contact out of every table, and leaves readings, ta
   expect(page).toMatchObject({ customerName: null, customerContact: null, vehicle: 'Van of [erased]' });
   expect(page.note).toBe('Ring [erased] before noon');
   expect(page.removed[0]!.note).toBe('[erased] agreed');
+  expect(page.advised).toMatchObject([{ text: 'Coolant hose', detail: '[erased] rings back', agreedBy: '[erased]' }]);
   expect(page.erased).toMatchObject({ reason: 'Asked for in writing.', by: { name: 'Manager of own' } });
   expect(page.events[0]!.text).toBe('customer’s data erased');
   expect([stays(page), stripOf(page)]).toEqual([stays(first), stripOf(first)]);
@@ -71,7 +79,7 @@ test('erasing takes name and contact out of every table, and leaves readings, ta
   expect(await shop.seen(namesake.id)).toMatchObject({ customerName: name, erased: null });
   await taken(erase(namesake.id));
   const left = (await everything()).toLowerCase();
-  for (const secret of ['élodie', 'marten', 'elodie@', 'another@']) expect(left).not.toContain(secret);
+  for (const secret of ['élodie', 'marten', 'elodie@', 'another@', 'corin']) expect(left).not.toContain(secret);
   const found = await bench.as('manager').get(`/api/search?q=${encodeURIComponent('Élodie')}`);
   expect(found.body.hits).toEqual([]);
 });
