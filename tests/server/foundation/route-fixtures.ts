@@ -4,7 +4,6 @@
  */
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from '@/tests/support/forms';
 import type { Furnished } from '@/tests/support/furnished';
-import { packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { twoHalves } from '@/tests/support/pictures';
 import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
