@@ -1,21 +1,14 @@
 import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
 import { useState } from 'react';
-import { sentenceOf } from '@/shared/client/api-problem';
-import { useGate } from '@/shared/client/gate';
-import { useRepair } from '@/shared/client/repairs';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import { DecideSource } from '@/shared/screens/pack-reading/decide-source';
 import { MeasureSource } from '@/shared/screens/pack-reading/measure-source';
+import { RepairStep } from '@/shared/screens/pack-reading/repair-step';
 import { StepScreen } from '@/shared/screens/pack-reading/step-screen';
 import { Button } from '@/shared/ui/primitives/button';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { Foot } from '@/shared/ui/screen/foot';
-import { HeaderBar } from '@/shared/ui/screen/header-bar';
-import { Screen } from '@/shared/ui/screen/screen';
 import { Empty } from '@/shared/ui/states/empty';
-import { ErrorState } from '@/shared/ui/states/error-state';
-import { Forbidden } from '@/shared/ui/states/forbidden';
-import { Loading } from '@/shared/ui/states/loading';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
@@ -23,35 +16,18 @@ export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 export default function SecondSource() {
   const { id } = useLocalSearchParams<{ id: string }>();
   const router = useRouter();
-  const repair = useRepair(id);
-  const gate = useGate('repair:write');
   const page = `/repairs/${id}`;
   const go = (to: string) => router.replace(to as Href);
-  const back = () => (router.canGoBack() ? router.back() : go(page));
-  if (gate.may && repair.data)
-    return (
-      <Source
-        key={id}
-        repair={repair.data}
-        onBack={back}
-        onRead={() => go(`${page}/reading`)}
-        onDone={() => go(page)}
-      />
-    );
   return (
-    <Screen single header={<HeaderBar title="Second source" onBack={back} />}>
-      {!gate.may ? (
-        <Forbidden what="Second sources are entered" roles={gate.roles} people={gate.people} />
-      ) : repair.isError ? (
-        <ErrorState
-          failed="The repair could not be read."
-          toDo={sentenceOf(repair.error)}
-          action={{ title: 'Try again', onPress: () => void repair.refetch(), busy: repair.isFetching }}
-        />
-      ) : (
-        <Loading what="the repair" onRetry={() => void repair.refetch()} />
+    <RepairStep
+      id={id}
+      title="Second source"
+      capability="repair:write"
+      what="Second sources are entered"
+      draw={(repair, back) => (
+        <Source key={id} repair={repair} onBack={back} onRead={() => go(`${page}/reading`)} onDone={() => go(page)} />
       )}
-    </Screen>
+    />
   );
 }
 
