@@ -3,6 +3,7 @@ import type { Sample } from '../plan/samples';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { choleskyLower, effectiveSampleSize, systematicResample } from '../statistics/particle-weights';
 import { seededRandom } from '../statistics/seeded-random';
+import { weightedCovariance } from '../statistics/weighted-covariance';
 import { liveDraws, liveSample, readAxes } from './live-draws';
 import { posteriorOf } from './posterior';
 
@@ -265,7 +266,7 @@ export class ParticleSet {
         mean[k]! += weights[at]! * value;
       }
     }
-    const lower = choleskyLower(covariance(rows, mean, weights, size), size);
+    const lower = choleskyLower(weightedCovariance(rows, mean, weights, size), size);
     const picked = systematicResample(weights, this.random());
     const memory = new Float64Array(count * MEMORY_COUNT);
     const noise = new Float64Array(size);
@@ -285,18 +286,4 @@ export class ParticleSet {
     this.asked = null;
     weights.fill(1 / count);
   }
-}
-
-function covariance(rows: Float64Array, mean: Float64Array, weights: Float64Array, size: number): Float64Array {
-  const matrix = new Float64Array(size * size);
-  for (let at = 0; at < weights.length; at += 1) {
-    for (let row = 0; row < size; row += 1) {
-      const off = weights[at]! * (rows[at * size + row]! - mean[row]!);
-      for (let column = 0; column <= row; column += 1)
-        matrix[row * size + column]! += off * (rows[at * size + column]! - mean[column]!);
-    }
-  }
-  for (let row = 0; row < size; row += 1)
-    for (let column = row + 1; column < size; column += 1) matrix[row * size + column] = matrix[column * size + row]!;
-  return matrix;
 }

@@ -2,6 +2,7 @@ import type { PlanModel } from '../plan/plan-model';
 import type { Sample } from '../plan/samples';
 import { choleskyInverse, choleskySolve } from '../statistics/cholesky-solve';
 import { choleskyLower, effectiveSampleSize } from '../statistics/particle-weights';
+import { weightedCovariance } from '../statistics/weighted-covariance';
 import { liveSample } from './live-draws';
 import { MEMORIES, type Look } from './particle-set';
 
@@ -201,12 +202,7 @@ function about(rows: Float64Array, weights: Float64Array, size: number) {
   weights.forEach((weight, one) => {
     for (let k = 0; k < size; k += 1) centre[k] = centre[k]! + weight * rows[one * size + k]!;
   });
-  const matrix = new Float64Array(size * size);
-  weights.forEach((weight, one) => {
-    for (let k = 0; k < size; k += 1)
-      for (let j = 0; j < size; j += 1)
-        matrix[k * size + j]! += weight * (rows[one * size + k]! - centre[k]!) * (rows[one * size + j]! - centre[j]!);
-  });
+  const matrix = weightedCovariance(rows, centre, weights, size);
   return { centre, lower: scaled(choleskyLower(matrix, size), WIDER) };
 }
 
