@@ -11,6 +11,7 @@ import { ChoiceList } from '@/shared/ui/primitives/choice-row';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Field } from '@/shared/ui/primitives/field';
 import { Link } from '@/shared/ui/primitives/link';
+import { SheetFields } from '@/shared/ui/primitives/sheet-fields';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { problemOfAct } from './act-problem';
 
@@ -90,44 +91,46 @@ export function AdvisedSheet({
       onConfirm={keep}
       onClose={onClose}
     >
-      <Field label="What is advised" value={typed.text} maxLength={80} onChangeText={(text) => set({ text })} />
-      <ChoiceList
-        label="What became of it"
-        value={outcome}
-        outset={14}
-        onChange={(next) => set({ outcome: next })}
-        choices={advisedOutcomes.map((value) => ({
-          value,
-          title: advisedOutcomeNames[value],
-          meaning: meanings[value],
-        }))}
-      />
-      <Field
-        label="Detail"
-        hint="When, or why"
-        value={typed.detail}
-        maxLength={80}
-        onChangeText={(detail) => set({ detail })}
-      />
-      <Field
-        label="The customer’s name, as agreement"
-        hint="Stands on the hand-over sheet with the time"
-        value={typed.agreedBy}
-        maxLength={80}
-        onChangeText={(agreedBy) => set({ agreedBy })}
-      />
-      {item ? (
-        <Link
-          title="Take it back"
-          label={`Take back ${item.text}`}
-          onPress={() => remove.mutate({ id: repair.id, rev: repair.rev, itemId: item.id }, done)}
+      <SheetFields>
+        <Field label="What is advised" value={typed.text} maxLength={80} onChangeText={(text) => set({ text })} />
+        <ChoiceList
+          label="What became of it"
+          value={outcome}
+          outset={14}
+          onChange={(next) => set({ outcome: next })}
+          choices={advisedOutcomes.map((value) => ({
+            value,
+            title: advisedOutcomeNames[value],
+            meaning: meanings[value],
+          }))}
         />
-      ) : null}
-      {problem ? (
-        <Txt tone="alarm" bold role="alert">
-          {problem}
-        </Txt>
-      ) : null}
+        <Field
+          label="Detail"
+          hint="When, or why"
+          value={typed.detail}
+          maxLength={80}
+          onChangeText={(detail) => set({ detail })}
+        />
+        <Field
+          label="The customer’s name, as agreement"
+          hint="Stands on the hand-over sheet with the time"
+          value={typed.agreedBy}
+          maxLength={80}
+          onChangeText={(agreedBy) => set({ agreedBy })}
+        />
+        {item ? (
+          <Link
+            title="Take it back"
+            label={`Take back ${item.text}`}
+            onPress={() => remove.mutate({ id: repair.id, rev: repair.rev, itemId: item.id }, done)}
+          />
+        ) : null}
+        {problem ? (
+          <Txt tone="alarm" bold role="alert">
+            {problem}
+          </Txt>
+        ) : null}
+      </SheetFields>
     </ConfirmSheet>
   );
 }

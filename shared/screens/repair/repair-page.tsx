@@ -81,9 +81,9 @@ export function RepairPage({
       onSetAside={open && !offline ? (reading) => setSheet({ kind: 'set-aside', reading }) : null}
     />
   );
+  const photos = <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />;
   const tail = (
     <>
-      <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />
       <RemovedPart removed={repair.removed} now={now} />
       <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
       <WaitPart
@@ -127,8 +127,6 @@ export function RepairPage({
             <View style={{ rowGap: 24 }}>
               <FactsPart repair={repair} now={now} />
               {wide ? readings : null}
-              {wide ? tail : null}
-              {wide ? customer : null}
             </View>
           }
           work={
@@ -142,20 +140,26 @@ export function RepairPage({
               {repair.sources.length > 0 ? <Rule gap={0} /> : null}
               <SourceLine repair={repair} now={now} />
               {wide ? <EventsPart events={repair.events} now={now} /> : null}
+              {wide ? photos : null}
             </View>
           }
           side={
             wide ? (
-              <Surface tone="sheet" style={{ padding: 18, borderRadius: 10, rowGap: 16 }}>
-                {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
-                <HandedOver repair={repair} />
-                {next}
-              </Surface>
+              <View style={{ rowGap: 24 }}>
+                <Surface tone="sheet" style={{ padding: 18, borderRadius: 10, rowGap: 16 }}>
+                  {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
+                  <HandedOver repair={repair} />
+                  {next}
+                </Surface>
+                {tail}
+                {customer}
+              </View>
             ) : (
               <View style={{ rowGap: 24 }}>
                 <HandedOver repair={repair} />
                 {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
                 {readings}
+                {photos}
                 {tail}
                 <EventsPart events={repair.events} now={now} />
                 {customer}
