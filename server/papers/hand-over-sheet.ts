@@ -97,9 +97,9 @@ function drawReadings(sheet: Sheet, rows: readonly ReadingRow[]): void {
   if (rows.length === 0) return;
   const { pdf, left, right, width } = sheet;
   const at = {
-    when: left + width * 0.25,
-    lowest: left + width * 0.545,
-    highest: left + width * 0.655,
+    when: left + width * 0.18,
+    lowest: left + width * 0.565,
+    highest: left + width * 0.667,
     spread: left + width * 0.76,
     ampHours: left + width * 0.86,
     by: left + width * 0.885,
