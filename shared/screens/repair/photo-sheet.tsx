@@ -14,7 +14,7 @@ import { domElement } from '@/shared/ui/primitives/dom-element';
 import { Field } from '@/shared/ui/primitives/field';
 import { Select } from '@/shared/ui/primitives/select';
 import { Txt } from '@/shared/ui/primitives/txt';
-import { photoAlt, photoOf, sightMeanings } from '@/shared/ui/repair/photo-words';
+import { photoAlt, sightMeanings } from '@/shared/ui/repair/photo-words';
 import { problemOfAct } from './act-problem';
 
 /** What a photo shows, as one value of the list: the pack, 'spare.<id>' or 'module.<position>'. */

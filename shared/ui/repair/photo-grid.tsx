@@ -5,7 +5,7 @@ import { useFormats } from '../format/formats';
 import { domElement } from '../primitives/dom-element';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
-import { photoAlt, photoOf } from './photo-words';
+import { photoAlt } from './photo-words';
 
 /** The photos as thumbnails with what they show; each opens the whole picture. */
 export function PhotoGrid({
