@@ -3,7 +3,7 @@ import { View } from 'react-native';
 import { isProblem } from '@/shared/client/api-problem';
 import { photoAddress, useNotePhoto, useRemovePhoto } from '@/shared/client/repairs';
 import { positionsOf } from '@/shared/contract/pack';
-import { photoSightNames, photoSights, type PhotoDto, type PhotoSight } from '@/shared/contract/photo';
+import { photoOf, photoSightNames, photoSights, type PhotoDto, type PhotoSight } from '@/shared/contract/photo';
 import type { RepairDto } from '@/shared/contract/repair';
 import { moment } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';

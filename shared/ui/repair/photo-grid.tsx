@@ -1,5 +1,5 @@
 import { Pressable, View } from 'react-native';
-import { photoSightNames, type PhotoDto } from '@/shared/contract/photo';
+import { photoOf, photoSightNames, type PhotoDto } from '@/shared/contract/photo';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { domElement } from '../primitives/dom-element';
