@@ -1,5 +1,5 @@
 /** The sentences of a hand-over sheet, out of the rows of its repair alone: no clock is asked. */
-import { groupsAt } from '@/shared/contract/pack';
+import { aimOf, groupsAt } from '@/shared/contract/pack';
 import { advisedOutcomeNames, moduleFateNames, repairStepNames, type RepairStepDto } from '@/shared/contract/repair';
 import type { PackReading } from '../entities/pack-reading';
 import type { NamedValue } from '../papers/hand-over-content';
@@ -9,7 +9,6 @@ import { bare, listText, lowerFirst } from './charge-words';
 import { inMillivolts, packVerdict } from './pack-numbers';
 import type { RepairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
-import { PROVEN_SPREAD_MILLIVOLTS } from './repair-steps';
 import { usedCapacity } from './spare-capacity';
 
 export const readingName = ({ stage, balanceCount }: Pick<PackReading, 'stage' | 'balanceCount'>): string =>
@@ -122,9 +121,9 @@ export function cautionWords(file: RepairFile, facts: RepairFacts, words: PaperW
   if (facts.proof === null) found.push('The pack was not read after the work: that it is in line is not proven.');
   else {
     const { spreadMillivolts } = packVerdict(facts.proof.groupVolts, file.repair);
-    if (spreadMillivolts > PROVEN_SPREAD_MILLIVOLTS)
+    if (spreadMillivolts > aimOf(file.repair))
       found.push(
-        `The last reading still spread over ${words.millivolts(spreadMillivolts)}; ${words.millivolts(PROVEN_SPREAD_MILLIVOLTS)} is the aim.`,
+        `The last reading still spread over ${words.millivolts(spreadMillivolts)}; ${words.millivolts(aimOf(file.repair))} is the aim.`,
       );
   }
   const { fitted } = facts;
@@ -132,8 +131,8 @@ export function cautionWords(file: RepairFile, facts: RepairFacts, words: PaperW
     const { capacityAh } = usedCapacity(fitted.spare, fitted.type);
     const agreement = agreementOf(fitted.type, capacityAh, fitted.charge.frozen.target.volts);
     const low = Math.abs(agreement?.lowMillivolts ?? 0);
-    // Under it nobody can tell the spare from its neighbours.
-    if (low >= PROVEN_SPREAD_MILLIVOLTS)
+    // Under the aim it is as good as its neighbours.
+    if (low >= aimOf(file.repair))
       found.push(
         `The spare holds another charge than its neighbours: at low charge the spread can rise to about ${words.millivolts(low)}.`,
       );

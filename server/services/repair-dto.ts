@@ -11,7 +11,7 @@ import type {
   RepairState,
   RepairWaitDto,
 } from '@/shared/contract/repair';
-import { positionsOf } from '@/shared/contract/pack';
+import { aimOf, positionsOf } from '@/shared/contract/pack';
 import type { Repair } from '../entities/repair';
 import type { StoredTarget } from '../entities/repair-json';
 import type { RepairWait } from '../entities/repair-wait';
@@ -39,13 +39,18 @@ export const stateOf = (repair: Repair): RepairState =>
         ? 'handed-over'
         : 'open';
 
-type Layout = Pick<Repair, 'moduleTypeId' | 'groupCount' | 'groupsPerModule' | 'positionOfGroup'>;
+type Pack = Pick<
+  Repair,
+  'moduleTypeId' | 'groupCount' | 'groupsPerModule' | 'positionOfGroup' | 'bleedAmps' | 'aimMillivolts'
+>;
 
-export const packDto = (pack: Layout, moduleTypeName: string | null): PackDto => ({
+export const packDto = (pack: Pack, moduleTypeName: string | null): PackDto => ({
   moduleTypeId: pack.moduleTypeId,
   groupCount: pack.groupCount,
   groupsPerModule: pack.groupsPerModule,
   positionOfGroup: pack.positionOfGroup,
+  bleedAmps: pack.bleedAmps,
+  aimMillivolts: aimOf(pack),
   moduleTypeName,
   moduleCount: new Set(positionsOf(pack)).size,
 });

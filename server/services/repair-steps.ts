@@ -1,4 +1,5 @@
 import type { PersonRef } from '@/shared/contract/common';
+import { aimOf } from '@/shared/contract/pack';
 import { repairSteps as stepOrder, type RepairStep, type RepairStepDto } from '@/shared/contract/repair';
 import { personRef } from './alert-dto';
 import { toInstant } from './instants';
@@ -6,12 +7,6 @@ import { packVerdict } from './pack-numbers';
 import { repairBlock } from './repair-block';
 import { repairFacts, type RepairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
-
-/**
- * Spread at or under which a repair is proven, mV. Common practice: what packs in good order show at rest, and about what
- * two readings of 96 groups can tell apart.
- */
-export const PROVEN_SPREAD_MILLIVOLTS = 10;
 
 interface Done {
   at: number;
@@ -69,7 +64,7 @@ function fitDone({ fitters }: RepairFile, { fitted }: RepairFacts): Done | null 
 
 /** A reading since the fit at or under the aim; else what was accepted with the hand-over. */
 function proveDone({ repair }: RepairFile, { proof }: RepairFacts): Done | null {
-  if (proof !== null && packVerdict(proof.groupVolts, repair).spreadMillivolts <= PROVEN_SPREAD_MILLIVOLTS)
+  if (proof !== null && packVerdict(proof.groupVolts, repair).spreadMillivolts <= aimOf(repair))
     return done(proof.at, proof.personId);
   return proof !== null && repair.handedOverAt !== null ? done(repair.handedOverAt, repair.handedOverById) : null;
 }

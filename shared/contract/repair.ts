@@ -183,6 +183,10 @@ export interface BalanceForecastDto {
   aimMillivolts: number;
   /** Null: it does not converge, or too little is known. */
   charges: Band | null;
+  /** What one of them has on the charger, h. */
+  hoursPerCharge: number;
+  /** Spread after each of the next ones, mV; empty where nothing is forecast. */
+  expectedMillivolts: Band[];
   from: 'bleed' | 'log' | 'both' | null;
   doesNotConverge: 'capacity-spread' | 'no-change' | 'grows' | null;
 }
