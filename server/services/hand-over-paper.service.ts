@@ -1,4 +1,5 @@
 /** The hand-over sheet of a repair: what was found, changed, read, advised and declined, as a PDF. */
+import { readingName } from '@/shared/contract/pack-reading';
 import type { PaperQuery } from '@/shared/contract/papers';
 import { groupsAt, positionsOf } from '@/shared/contract/pack';
 import type { Deps, Member } from '../deps';
@@ -9,7 +10,7 @@ import type { Paper } from '../papers/page';
 import { paperWords, type PaperWords } from '../papers/paper-words';
 import { eventsOfRepairs } from '../repositories/repair-rows.repository';
 import { bare, lowerFirst } from './charge-words';
-import { advisedWords, cautionWords, changedWords, firstName, foundWords, readingName } from './hand-over-words';
+import { advisedWords, cautionWords, changedWords, firstName, foundWords } from './hand-over-words';
 import { ampHoursOf, packVerdict } from './pack-numbers';
 import { paperPhotos } from './paper-photos';
 import { repairFacts, standing, type RepairFacts } from './repair-facts';

@@ -1,7 +1,6 @@
 /** The sentences of a hand-over sheet, out of the rows of its repair alone: no clock is asked. */
 import { aimOf, groupsAt } from '@/shared/contract/pack';
 import { advisedOutcomeNames, moduleFateNames, repairStepNames, type RepairStepDto } from '@/shared/contract/repair';
-import type { PackReading } from '../entities/pack-reading';
 import type { NamedValue } from '../papers/hand-over-content';
 import type { PaperWords } from '../papers/paper-words';
 import { agreementOf } from './candidates.service';
@@ -10,9 +9,6 @@ import { inMillivolts, packVerdict } from './pack-numbers';
 import type { RepairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
 import { usedCapacity } from './spare-capacity';
-
-export const readingName = ({ stage, balanceCount }: Pick<PackReading, 'stage' | 'balanceCount'>): string =>
-  stage === 'arrival' ? 'Arrival' : stage === 'after-fit' ? 'After the fit' : `Balance charge ${balanceCount ?? 1}`;
 
 export const firstName = (file: RepairFile, personId: string): string =>
   (file.people.get(personId)?.name ?? 'somebody').split(' ')[0]!;

@@ -6,6 +6,10 @@ import { groupVolts, optionalQuantity, quantity } from './quantity';
 
 export const readingStages = ['arrival', 'after-fit', 'after-balance'] as const;
 export type ReadingStage = (typeof readingStages)[number];
+/** 'Arrival', 'After the fit', 'Balance charge 2' */
+export const readingName = ({ stage, balanceCount }: Pick<PackReadingInput, 'stage' | 'balanceCount'>): string =>
+  stage === 'arrival' ? 'Arrival' : stage === 'after-fit' ? 'After the fit' : `Balance charge ${balanceCount ?? 1}`;
+
 export const readingSources = ['typed', 'pasted', 'file'] as const;
 
 const stageShape = {

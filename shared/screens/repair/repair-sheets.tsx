@@ -1,7 +1,6 @@
 import { useDeleteRepair, useSetReadingAside } from '@/shared/client/repairs';
-import type { PackReadingDto } from '@/shared/contract/pack-reading';
+import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading';
 import type { RepairDto, RepairWaitDto } from '@/shared/contract/repair';
-import { readingName } from '@/shared/ui/repair/repair-words';
 import { HandOverSheet } from './hand-over-sheet';
 import { ReasonSheet } from './reason-sheet';
 import { RemovedSheet } from './removed-sheet';

@@ -13,10 +13,6 @@ import { coming } from '../bench/bench-words';
 import { millivolts } from '../format/quantities';
 import { stages, type StageMark } from '../stage/stages';
 
-/** 'Arrival', 'After the fit', 'Balance charge 2' */
-export const readingName = ({ stage, balanceCount }: Pick<PackReadingDto, 'stage' | 'balanceCount'>): string =>
-  stage === 'arrival' ? 'Arrival' : stage === 'after-fit' ? 'After the fit' : `Balance charge ${balanceCount ?? 1}`;
-
 /** Readings that count, newest first. */
 export const standing = (readings: readonly PackReadingDto[]): PackReadingDto[] =>
   readings.filter(({ setAside }) => setAside === null).sort((a, b) => b.at.localeCompare(a.at));

@@ -51,6 +51,8 @@ export function repairOf(step: RepairStep | null, more: Partial<RepairPageDto> =
       groupCount: 96,
       groupsPerModule: 2,
       positionOfGroup: null,
+      bleedAmps: null,
+      aimMillivolts: 10,
       moduleTypeName: '2-series 66 Ah',
       moduleCount: 48,
     },
