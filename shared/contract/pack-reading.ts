@@ -83,6 +83,12 @@ export interface PackReadingDto extends Omit<PackReadingInput, 'at'> {
   setAside: { reason: string; at: Instant; by: PersonRef } | null;
 }
 
+/**
+ * What two instruments may show differently at one group once their offset is off, V: within it the odd group of a module
+ * is told from a healthy one all the same. Common practice.
+ */
+export const SOURCE_TOLERANCE_VOLTS = 0.01;
+
 /** Hand-meter readings of the suspected module's groups, the meter in the hand. */
 export const secondSourceSchema = z.object({
   readingId: id,

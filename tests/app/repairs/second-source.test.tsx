@@ -21,6 +21,7 @@ const begin = (role: Role, repair: RepairPageDto) => {
   server = fakeServer(role);
   server.answers['GET /api/repairs/r1'] = () => Response.json(present);
   server.answers['GET /api/meters'] = () => Response.json(meters);
+  server.answers['GET /api/chargers'] = () => Response.json([{ id: 'c1', meterId: 'm1' }]);
   draw(<SecondSource />);
 };
 beforeEach(() => {
@@ -40,6 +41,10 @@ describe('measuring the suspected module', () => {
     expect(await screen.findByText('The meter agrees with the pack at module 2.')).toBeTruthy();
     await type('G3', '3,950');
     expect(await screen.findByText(/^The meter disagrees with the pack: G3 by 80.mV\.$/)).toBeTruthy();
+    // m1 is the display of a charger: it cannot read a module in the pack.
+    const offered = [...screen.getByLabelText<HTMLSelectElement>('Read with').options].map(({ value }) => value);
+    expect(offered).toContain('m2');
+    expect(offered).not.toContain('m1');
     fireEvent.change(screen.getByLabelText('Read with'), { target: { value: 'm2' } });
     server.answers['POST /api/repairs/r1/second-source'] = () => {
       present = repairOf({ readings: [reading()], sources: [source({ pointsTo: null })], rev: 4 });
