@@ -11,6 +11,7 @@ import { Advised1765500000000 } from './1765500000000-advised';
 import { Photos1765550000000 } from './1765550000000-photos';
 import { CustomerErased1765600000000 } from './1765600000000-customer-erased';
 import { PackBalance1765800000000 } from './1765800000000-pack-balance';
+import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
 
 export const migrations = [
   Initial1764600000000,
@@ -25,4 +26,5 @@ export const migrations = [
   Photos1765550000000,
   CustomerErased1765600000000,
   PackBalance1765800000000,
+  FittedSpare1765810000000,
 ];

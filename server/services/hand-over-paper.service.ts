@@ -134,9 +134,9 @@ function groupsNote(before: PackReading | null, after: PackReading | null, words
 }
 
 /** Module positions that got another module. */
-const changedPositions = ({ charges }: RepairFile): string[] =>
-  charges.flatMap(({ charge }) =>
-    charge.stage === 'fitted' && charge.modulePosition !== null ? [charge.modulePosition] : [],
+const changedPositions = ({ charges, fittedAsItIs }: RepairFile): string[] =>
+  [...charges.flatMap(({ charge }) => (charge.stage === 'fitted' ? [charge] : [])), ...fittedAsItIs].flatMap(
+    ({ modulePosition }) => (modulePosition === null ? [] : [modulePosition]),
   );
 
 function groupRows(

@@ -26,7 +26,7 @@ export async function paperPhotos(config: Config, file: RepairFile, words: Paper
   return drawn;
 }
 
-function titleOf({ photoSpares }: RepairFile, { spareId, modulePosition, seen }: Photo, number: number): string {
-  const of = photoOf({ modulePosition, spare: photoSpares.get(spareId ?? '') ?? null });
+function titleOf({ spares }: RepairFile, { spareId, modulePosition, seen }: Photo, number: number): string {
+  const of = photoOf({ modulePosition, spare: spares.get(spareId ?? '') ?? null });
   return `Photo ${number}: ${of}${seen === 'none' ? '' : `, ${lowerFirst(photoSightNames[seen])}`}`;
 }

@@ -3,6 +3,7 @@ import type { PackDto } from '@/shared/contract/pack';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type {
   AdvisedDto,
+  FittedSpareDto,
   RemovedModuleDto,
   RepairCardDto,
   RepairDto,
@@ -29,6 +30,7 @@ import { repairFacts, type RepairFacts } from './repair-facts';
 import { loadRepairFile, type RepairFile } from './repair-file';
 import { expectedAfterFit, forecastOf } from './repair-forecast';
 import { repairSteps } from './repair-steps';
+import { spareAsItIs } from './spare-as-it-is';
 
 export const stateOf = (repair: Repair): RepairState =>
   repair.deletedAt !== null
@@ -122,6 +124,17 @@ const removedDto = ({ people, removed }: RepairFile): RemovedModuleDto[] =>
     by: personRef(people, personId)!,
   }));
 
+const fittedDto = ({ people, spares, fittedAsItIs }: RepairFile): FittedSpareDto[] =>
+  fittedAsItIs.map(({ id, spareId, modulePosition, groupVolts, note, at, personId }) => ({
+    id,
+    spare: { id: spareId, label: spares.get(spareId)?.label ?? '' },
+    modulePosition,
+    groupVolts,
+    note,
+    at: toInstant(at),
+    by: personRef(people, personId)!,
+  }));
+
 const advisedDto = ({ people, advised }: RepairFile): AdvisedDto[] =>
   advised.map(({ id, text, outcome, detail, agreedBy, agreedAt, at, personId }) => ({
     id,
@@ -155,6 +168,7 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
     target: targetDto(file, facts.target),
     spare: spare === null ? null : { id: spare.id, label: spare.label, shelfPlace: spare.shelfPlace },
     charges: file.charges.map((charge) => chargeCard(charge, now)),
+    fittedAsItIs: fittedDto(file),
     removed: removedDto(file),
     advised: advisedDto(file),
     wait: file.waits.map((wait) => waitDto(file, wait)),
@@ -194,8 +208,10 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
 export async function repairPage(manager: EntityManager, file: RepairFile, now: number): Promise<RepairPageDto> {
   const { id, workshopId } = file.repair;
   const events = (await eventsOfRepairs(manager, workshopId, [id])).get(id) ?? [];
+  const asItIs = await spareAsItIs(manager, file, now);
   return {
     ...repairDto(file, now),
+    asItIs: asItIs && { readAt: toInstant(asItIs.reading.at), old: asItIs.old },
     events: events.map((event): RepairEventDto => ({
       id: event.id,
       at: toInstant(event.at),

@@ -22,8 +22,8 @@ const TWO_METERS_VOLTS = 0.002;
 const spreadOf = (volts: readonly number[]): number => Math.max(...volts) - Math.min(...volts);
 
 /**
- * Spread right after the fit: the healthy groups as they were read at arrival, with the spare's groups as its check has
- * them, or within the tolerance of the target where none was made yet.
+ * Spread right after the fit: the healthy groups as they were read at arrival, with the spare's groups as its check, or
+ * where it needed no charge its reading, has them, or within the tolerance of the target where none was made yet.
  * @returns null before the target is taken
  */
 export function expectedAfterFit(file: RepairFile, facts: RepairFacts): RepairDto['expectedAfterFit'] {
@@ -33,8 +33,9 @@ export function expectedAfterFit(file: RepairFile, facts: RepairFacts): RepairDt
   const healthy = arrival.groupVolts.filter((_, group) => !out.has(group));
   if (healthy.length === 0) return null;
   const check = facts.ready?.restChecks.at(-1);
-  const groups = check ? check.verdict.groups.map(({ volts }) => volts) : [target.volts];
-  const doubt = check ? TWO_METERS_VOLTS : target.toleranceMillivolts / 1000;
+  const known = check ? check.verdict.groups.map(({ volts }) => volts) : (facts.asItIs?.groupVolts ?? null);
+  const groups = known ?? [target.volts];
+  const doubt = known ? TWO_METERS_VOLTS : target.toleranceMillivolts / 1000;
   const likely = spreadOf([...healthy, ...groups]);
   const wide = spreadOf([...healthy, ...groups.flatMap((volts) => [volts - doubt, volts + doubt])]);
   const low = Math.max(spreadOf(healthy), likely - doubt);

@@ -50,14 +50,15 @@ function spareDone({ repair }: RepairFile, facts: RepairFacts): Done | null {
   return charge ? done(charge.createdAt, charge.createdById) : null;
 }
 
-function chargeDone({ ready }: RepairFacts): Done | null {
-  if (ready === null) return null;
+/** A spare that needed no charge is past it once it is in. */
+function chargeDone({ ready, asItIs }: RepairFacts): Done | null {
+  if (ready === null) return asItIs === null ? null : done(asItIs.at, asItIs.personId);
   const { charge, restChecks } = ready;
   return done(charge.readyAt ?? charge.closedAt ?? charge.createdAt, restChecks.at(-1)?.personId ?? charge.personId);
 }
 
-function fitDone({ fitters }: RepairFile, { fitted }: RepairFacts): Done | null {
-  if (fitted === null) return null;
+function fitDone({ fitters }: RepairFile, { fitted, asItIs }: RepairFacts): Done | null {
+  if (fitted === null) return asItIs === null ? null : done(asItIs.at, asItIs.personId);
   const { charge } = fitted;
   return done(charge.closedAt ?? charge.createdAt, fitters.get(charge.id) ?? charge.personId);
 }
