@@ -17,6 +17,7 @@ import { EventsPart } from '@/shared/ui/repair/events-part';
 import { FactsPart } from '@/shared/ui/repair/facts-part';
 import { PackHead } from '@/shared/ui/repair/pack-head';
 import { ReadingsPart } from '@/shared/ui/repair/readings-part';
+import { FittedPart } from '@/shared/ui/repair/fitted-part';
 import { RemovedPart } from '@/shared/ui/repair/removed-part';
 import { packWords, standing, vehicleAndBay } from '@/shared/ui/repair/repair-words';
 import { SourceLine } from '@/shared/ui/repair/source-line';
@@ -70,6 +71,7 @@ export function RepairPage({
       onGo={onGo}
       onHandOver={() => setSheet({ kind: 'hand-over' })}
       onRemoved={() => setSheet({ kind: 'removed' })}
+      onFit={() => setSheet({ kind: 'fit' })}
     />
   );
   const readings = (
@@ -84,6 +86,7 @@ export function RepairPage({
   const tail = (
     <>
       <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />
+      <FittedPart fitted={repair.fittedAsItIs} now={now} />
       <RemovedPart removed={repair.removed} now={now} />
       <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
       <WaitPart

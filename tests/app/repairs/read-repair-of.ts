@@ -37,6 +37,8 @@ export const repairOf = (more: Partial<RepairPageDto> = {}): RepairPageDto => ({
     spare: null,
     charges: [],
     removed: [],
+    fittedAsItIs: [],
+    asItIs: null,
     photos: [],
     advised: [],
     conditions: [],

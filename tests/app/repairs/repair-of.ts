@@ -73,6 +73,8 @@ export function repairOf(step: RepairStep | null, more: Partial<RepairPageDto> =
     spare: null,
     charges: [],
     removed: [],
+    fittedAsItIs: [],
+    asItIs: null,
     photos: [],
     conditions: [],
     advised: [],

@@ -166,6 +166,14 @@ describe('the next thing to do', () => {
     );
   });
 
+  it('with a spare within the tolerance is to fit it without a charge, or to read it once more where that is old', () => {
+    const target = { volts: 3.968, toleranceMillivolts: 5 } as RepairPageDto['target'];
+    const spare = { id: 's1', label: 'S-0417', shelfPlace: 'D3' };
+    const asItIs = { readAt: '2026-06-09T09:00:00.000Z', old: false };
+    expect(path(repairOf('charge', { spare, target, asItIs }))).toBe('fit');
+    expect(path(repairOf('charge', { spare, target, asItIs: { ...asItIs, old: true } }))).toBe('/spares/s1/reading');
+  });
+
   it('of an open charge is that charge’s own', () => {
     const charge = card('R-2418', 'queued', null, { id: 'c9' });
     expect(path(repairOf('charge', { charge }))).toBe('/charges/c9/checks');
