@@ -1,13 +1,13 @@
 /** What the plan of a spare for a repair is reckoned from, in a list of many and for one alone. */
-import type { ChannelParameters, PlanInput, SpareState } from '@/calc/plan-types';
+import type { ChannelParameters, ModuleParameters, PlanInput, SpareState, WorkshopParameters } from '@/calc/plan-types';
 import type { Meter } from '../entities/meter';
 import type { ModuleType } from '../entities/module-type';
+import type { Spare } from '../entities/spare';
 import type { SpareReading } from '../entities/spare-reading';
-import type { Workshop } from '../entities/workshop';
 import { correctedVolt, meterOffsetSdVolts } from './meter-trust';
 import { computedTarget } from './pack-numbers';
 import { PLAN_SEED, ROOM_CELSIUS } from './plan-inputs';
-import { moduleParameters, workshopParameters } from './plan-parameters';
+import { moduleParameters, spareState, workshopParameters } from './plan-parameters';
 import { repairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
 import { closesInSeconds } from './working-hours';
@@ -42,16 +42,43 @@ export function candidateTarget(file: RepairFile, type: ModuleType, now: number)
 
 /** What the plans of all spares for one target share. */
 export interface CandidateGround {
-  type: ModuleType;
   target: CandidateTarget;
   channels: ChannelParameters[];
-  workshop: Workshop;
   meters: ReadonlyMap<string, Meter>;
   now: number;
+  /** Once for all of them: what is worked out of a curve is kept with the curve. */
+  module: ModuleParameters;
+  workshop: WorkshopParameters;
+}
+
+export const candidateGround = (
+  { workshop, meters }: Pick<RepairFile, 'workshop' | 'meters'>,
+  type: ModuleType,
+  target: CandidateTarget,
+  channels: ChannelParameters[],
+  now: number,
+): CandidateGround => ({
+  ...{ target, channels, meters, now, module: moduleParameters(type) },
+  workshop: workshopParameters(workshop, closesInSeconds(workshop, now, now)),
+});
+
+/** Ages of readings by whole hours: what a module loses in one is nothing, and spares that read alike are reckoned once. */
+const AGE_STEP_S = 3600;
+
+/** A spare as the plan of a list takes it. */
+export function candidateState(
+  spare: Spare,
+  type: ModuleType,
+  reading: SpareReading,
+  meters: ReadonlyMap<string, Meter>,
+  now: number,
+): SpareState {
+  const state = spareState(spare, type, reading, meters.get(reading.meterId ?? '') ?? null, now);
+  return { ...state, readingAgeS: Math.round(state.readingAgeS / AGE_STEP_S) * AGE_STEP_S };
 }
 
 export function candidatePlan(ground: CandidateGround, state: SpareState, reading: SpareReading): PlanInput {
-  const { type, target, channels, workshop, meters, now } = ground;
+  const { module, target, channels, workshop, meters, now } = ground;
   const packMeter = meters.get(target.meterId ?? '') ?? null;
   const meter = meters.get(reading.meterId ?? '') ?? null;
   const meterVolts = meterOffsetSdVolts(
@@ -59,7 +86,7 @@ export function candidatePlan(ground: CandidateGround, state: SpareState, readin
     now,
   );
   return {
-    module: moduleParameters(type),
+    module,
     spare: state,
     target: {
       volts: correctedVolt(target.volts, packMeter),
@@ -71,7 +98,7 @@ export function candidatePlan(ground: CandidateGround, state: SpareState, readin
     channels,
     resistors: [],
     neighbour: null,
-    workshop: workshopParameters(workshop, closesInSeconds(workshop, now, now)),
+    workshop,
     readyByS: null,
     clipOnAtS: 0,
     celsius: state.celsius ?? ROOM_CELSIUS,

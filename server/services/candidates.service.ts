@@ -11,13 +11,11 @@ import { conflict } from '../errors/domain-error';
 import { lastMoves, type SpareMove } from '../repositories/spare-moves.repository';
 import { reservationsBySpare } from '../repositories/repairs.repository';
 import { lastSpareReadings, listSpares, openChargesBySpare, type SpareCharge } from '../repositories/spares.repository';
-import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
-import { candidatePlan, candidateTarget } from './candidate-plan';
+import { candidateGround, candidatePlan, candidateState, candidateTarget } from './candidate-plan';
 import { titleOf } from './charge-words';
 import { toOptionalInstant } from './instants';
 import { curveOf, orNull, packCapacityAh } from './pack-numbers';
 import { channelsFor } from './plan-inputs';
-import { spareState } from './plan-parameters';
 import { loadRepairFile } from './repair-file';
 import { usedCapacity } from './spare-capacity';
 
@@ -53,16 +51,14 @@ export async function candidates(deps: Deps, member: Member, id: string, now: nu
   const charges = await openChargesBySpare(manager, workshopId);
   const moves = await lastMoves(manager, workshopId);
   const reservations = await reservationsBySpare(manager, workshopId);
-  const workshop = await workshopForPlans(manager, workshopId);
   const bench = await channelsFor(manager, workshopId, { id: '', moduleTypeId: type.id }, false, meters, now);
   const channels = distinct(bench.channels);
-  const ground = target === null ? null : { type, target, channels, workshop, meters, now };
+  const ground = target === null ? null : candidateGround(file, type, target, channels, now);
   const known = new Map<string, Reckoned>();
 
   const reckon = (spare: Spare, reading: SpareReading): Reckoned => {
     if (ground === null) return { seconds: null, channelName: null, needsCharge: true, problems: [], ruledOut: false };
-    const meter = meters.get(reading.meterId ?? '') ?? null;
-    const state = spareState(spare, type, reading, meter, now);
+    const state = candidateState(spare, type, reading, meters, now);
     const key = JSON.stringify(state);
     const before = known.get(key);
     if (before) return before;
@@ -143,7 +139,7 @@ function reckoned(input: PlanInput): Reckoned {
     return { seconds: { p10: 0, p50: 0, p90: 0 }, channelName: null, needsCharge: false, problems, ruledOut: false };
   }
   if (option === null) return out([reason ?? 'No channel can bring it there.']);
-  const apart = option.cautions.filter(({ code }) => code === 'ends-apart');
+  const apart = option.apart === null ? [] : [option.apart];
   return {
     seconds: option.totalS,
     channelName: input.channels.find(({ channelId }) => channelId === option.channelIds[0])?.name ?? null,

@@ -7,8 +7,7 @@ import type { SpareReading } from '../entities/spare-reading';
 import type { StoredTarget } from '../entities/repair-json';
 import { lastMoveOf } from '../repositories/spare-moves.repository';
 import { findLastSpareReading } from '../repositories/spares.repository';
-import { candidatePlan, candidateTarget } from './candidate-plan';
-import { spareState } from './plan-parameters';
+import { candidateGround, candidatePlan, candidateState, candidateTarget } from './candidate-plan';
 import { repairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
 
@@ -29,7 +28,7 @@ export interface AsItIs {
 
 /** Null: it needs a charge, or something else comes first. */
 export async function spareAsItIs(manager: EntityManager, file: RepairFile, now: number): Promise<AsItIs | null> {
-  const { repair, spare, type, workshop, meters } = file;
+  const { repair, spare, type } = file;
   const facts = repairFacts(file);
   const { target } = facts;
   if (repair.handedOverAt !== null || repair.deletedAt !== null) return null;
@@ -38,8 +37,8 @@ export async function spareAsItIs(manager: EntityManager, file: RepairFile, now:
   const reading = await findLastSpareReading(manager, repair.workshopId, spare.id);
   const move = reading === null ? null : await lastMoveOf(manager, repair.workshopId, spare.id);
   if (reading === null || (move !== null && move.until > reading.at)) return null;
-  const ground = { type, target: candidateTarget(file, type, now)!, channels: [], workshop, meters, now };
-  const state = spareState(spare, type, reading, meters.get(reading.meterId ?? '') ?? null, now);
+  const ground = candidateGround(file, type, candidateTarget(file, type, now)!, [], now);
+  const state = candidateState(spare, type, reading, file.meters, now);
   const { alreadyWithin, refusals } = soonestTerminals(candidatePlan(ground, state, reading));
   if (!alreadyWithin || refusals.length > 0) return null;
   return { spare, type, target, reading, old: now - reading.at > MOST_AGE };
