@@ -8,10 +8,11 @@ import { fakeServer } from '../workshop/server';
 import { reading, repairOf, source } from './read-repair-of';
 
 const gone = vi.fn();
+const replaced = vi.fn();
 vi.mock('expo-router', async (original) => ({
   ...(await original<object>()),
   useLocalSearchParams: () => ({ id: 'r1' }),
-  useRouter: () => ({ canGoBack: () => false, replace: gone, push: vi.fn(), back: vi.fn() }),
+  useRouter: () => ({ canGoBack: () => false, replace: replaced, dismissTo: gone, push: vi.fn(), back: vi.fn() }),
 }));
 
 let server: ReturnType<typeof fakeServer>;
@@ -107,5 +108,5 @@ describe('where the two disagree', () => {
 it('asks for the pack’s reading first where there is none', async () => {
   begin('technician', repairOf());
   fireEvent.click(await press('Enter the group voltages'));
-  expect(gone).toHaveBeenCalledWith('/repairs/r1/reading');
+  expect(replaced).toHaveBeenCalledWith('/repairs/r1/reading');
 });
