@@ -19,7 +19,7 @@ import { PackHead } from '@/shared/ui/repair/pack-head';
 import { ReadingsPart } from '@/shared/ui/repair/readings-part';
 import { FittedPart } from '@/shared/ui/repair/fitted-part';
 import { RemovedPart } from '@/shared/ui/repair/removed-part';
-import { packWords, standing, vehicleAndBay } from '@/shared/ui/repair/repair-words';
+import { packWords, standing, unrecorded, vehicleAndBay } from '@/shared/ui/repair/repair-words';
 import { SourceLine } from '@/shared/ui/repair/source-line';
 import { StepStrip } from '@/shared/ui/repair/step-strip';
 import { WaitPart } from '@/shared/ui/repair/wait-part';
@@ -87,7 +87,12 @@ export function RepairPage({
     <>
       <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />
       <FittedPart fitted={repair.fittedAsItIs} now={now} />
-      <RemovedPart removed={repair.removed} now={now} />
+      <RemovedPart
+        removed={repair.removed}
+        missing={unrecorded(repair)}
+        now={now}
+        onRecord={mayWrite && mayAdvise ? () => setSheet({ kind: 'removed' }) : null}
+      />
       <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
       <WaitPart
         waits={repair.wait}

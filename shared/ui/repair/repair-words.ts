@@ -110,3 +110,15 @@ export function sourceWords(source: SecondSourceDto): { title: string; agrees: b
     ? { title: `${by} decided: module ${decided.modulePosition ?? ''}`, agrees: true }
     : { title: `${by} decided: the pack is read again`, agrees: false };
 }
+
+/** Position of the module that came out, where a spare is in and nobody has recorded what became of it; null: nothing is missing. */
+export function unrecorded({
+  steps,
+  failing,
+  removed,
+}: Pick<RepairDto, 'steps' | 'failing' | 'removed'>): string | null {
+  const fitted = steps.some(({ step, state }) => step === 'fit' && state === 'done');
+  return fitted && failing !== null && !removed.some(({ modulePosition }) => modulePosition === failing)
+    ? failing
+    : null;
+}
