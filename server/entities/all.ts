@@ -8,6 +8,7 @@ import { ChargeEvent } from './charge-event';
 import { ChargeReading } from './charge-reading';
 import { Charger } from './charger';
 import { CheckAnswer } from './check-answer';
+import { FittedSpare } from './fitted-spare';
 import { IdempotencyKey } from './idempotency-key';
 import { Invitation } from './invitation';
 import { LevellingResistor } from './levelling-resistor';
@@ -68,5 +69,6 @@ export const entities = [
   RepairEvent,
   Wall,
   WallCode,
+  FittedSpare,
   IdempotencyKey,
 ];

@@ -56,6 +56,12 @@ export class Repair {
   @Column(packColumns.positionOfGroup)
   positionOfGroup!: string[] | null;
 
+  @Column(packColumns.bleedAmps)
+  bleedAmps!: number | null;
+
+  @Column(packColumns.aimMillivolts)
+  aimMillivolts!: number | null;
+
   @Column(optionalTextColumn('customer_name'))
   customerName!: string | null;
 

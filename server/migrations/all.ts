@@ -10,6 +10,8 @@ import { Repairs1765300000000 } from './1765300000000-repairs';
 import { Advised1765500000000 } from './1765500000000-advised';
 import { Photos1765550000000 } from './1765550000000-photos';
 import { CustomerErased1765600000000 } from './1765600000000-customer-erased';
+import { PackBalance1765800000000 } from './1765800000000-pack-balance';
+import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
 
 export const migrations = [
   Initial1764600000000,
@@ -23,4 +25,6 @@ export const migrations = [
   Advised1765500000000,
   Photos1765550000000,
   CustomerErased1765600000000,
+  PackBalance1765800000000,
+  FittedSpare1765810000000,
 ];

@@ -35,6 +35,18 @@ export interface NamedValue {
   value: string;
 }
 
+export interface PaperPhoto {
+  /** 'Photo 2: Module 17, swelling' */
+  title: string;
+  /** What was noted on it, who took it and when. */
+  note: string;
+  /** A JPEG; null: its file is gone. */
+  picture: Buffer | null;
+  /** Pixels: its proportions. */
+  width: number;
+  height: number;
+}
+
 export interface HandOverContent {
   title: string;
   workshop: string;
@@ -55,6 +67,8 @@ export interface HandOverContent {
   /** Median, lowest, highest and spread of each reading that the table shows. */
   sums: { name: string; values: string[] }[];
   footnotes: string[];
+  /** The first taken first. */
+  photos: PaperPhoto[];
   signatures: [string, string];
   words: PaperWords;
 }

@@ -1,8 +1,9 @@
-/** The hand-over sheet (look §12): the story on the first page, every group and the signatures on the last. */
+/** The hand-over sheet (look §12): the story on the first page, every group and the signatures on the next, then the photos. */
 import { standingLine } from '@/shared/contract/standing-line';
 import type { HandOverContent, NamedValue, PackPicture, ReadingRow } from './hand-over-content';
 import { drawPackPicture, pictureHeight, pictureScale, type PictureScale } from './pack-picture';
 import { bytesOf, linesOf, put } from './page';
+import { drawPhotos } from './photo-pages';
 import { beginSheet, body, columnHead, heading, LINE, number, small, strong, type Sheet } from './sheet-flow';
 import { drawGroups } from './groups-table';
 
@@ -19,6 +20,7 @@ export function drawHandOverSheet(content: HandOverContent, paper: 'a4' | 'lette
   drawCautions(sheet, content.cautions);
   sheet.addPage();
   drawGroups(sheet, content);
+  drawPhotos(sheet, content.photos);
   sheet.finish();
   return bytesOf(sheet.pdf);
 }
@@ -65,7 +67,7 @@ function drawPictures(sheet: Sheet, content: HandOverContent): void {
   const cut = scale.foot > 0 ? ` The foot is cut at ${content.words.voltsNumber(scale.foot).replace(/0$/, '')} V.` : '';
   sheet.y += 2;
   sheet.paragraph(
-    `Volts at rest, ${count === 1 ? 'one group' : `all ${count} groups`}${both}.${cut} Every value is on the last pages.`,
+    `Volts at rest, ${count === 1 ? 'one group' : `all ${count} groups`}${both}.${cut} Every value is in the table of all groups.`,
     small,
     12,
   );

@@ -7,6 +7,10 @@ export const findPhoto = (manager: EntityManager, workshopId: string, id: string
 export const countPhotos = (manager: EntityManager, workshopId: string, repairId: string): Promise<number> =>
   manager.countBy(Photo, { workshopId, repairId });
 
+/** The files that rows name, of all workshops: what lies beside them belongs to nobody. */
+export const namedPhotoFiles = async (manager: EntityManager): Promise<Set<string>> =>
+  new Set((await manager.find(Photo, { select: { file: true } })).map(({ file }) => file));
+
 export async function insertPhoto(manager: EntityManager, photo: Photo): Promise<void> {
   await manager.insert(Photo, photo);
 }

@@ -1,6 +1,7 @@
 /** The rows that hang on repairs, for one repair or for a whole list at once. */
 import { In, IsNull, type EntityManager, type FindOptionsOrder, type ObjectLiteral } from 'typeorm';
 import { AdvisedItem } from '../entities/advised-item';
+import { FittedSpare } from '../entities/fitted-spare';
 import { PackReading } from '../entities/pack-reading';
 import { Photo } from '../entities/photo';
 import { RemovedModule } from '../entities/removed-module';
@@ -32,6 +33,7 @@ export const peopleOfRepairs = listing(RepairPerson, { place: 'ASC' });
 export const readingsOfRepairs = listing(PackReading, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 export const sourcesOfRepairs = listing(SecondSource, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 export const removedOfRepairs = listing(RemovedModule, { at: 'DESC', id: 'ASC' });
+export const fittedOfRepairs = listing(FittedSpare, { at: 'DESC', id: 'ASC' });
 export const photosOfRepairs = listing(Photo, { at: 'DESC', id: 'ASC' });
 /** The first advised comes first. */
 export const advisedOfRepairs = listing(AdvisedItem, { at: 'ASC', id: 'ASC' });
@@ -74,6 +76,10 @@ export async function updateSecondSource(
 
 export async function insertRemovedModule(manager: EntityManager, removed: RemovedModule): Promise<void> {
   await manager.insert(RemovedModule, removed);
+}
+
+export async function insertFittedSpare(manager: EntityManager, fitted: FittedSpare): Promise<void> {
+  await manager.insert(FittedSpare, fitted);
 }
 
 export async function insertAdvised(manager: EntityManager, item: AdvisedItem): Promise<void> {

@@ -14,6 +14,7 @@ import {
   changeRepairSchema,
   correctWaitSchema,
   deleteRepairSchema,
+  fitAsItIsSchema,
   handOverRepairSchema,
   removedModuleSchema,
   repairSchema,
@@ -33,6 +34,7 @@ import {
 import { handOverPaper } from '../services/hand-over-paper.service';
 import { addPackReading, setReadingAside } from '../services/pack-readings.service';
 import { addPackType, changePackType, packTypes } from '../services/pack-types.service';
+import { fitAsItIs } from '../services/repair-fits.service';
 import { freeSpare, reserveSpare } from '../services/repair-spares.service';
 import { takeTarget } from '../services/repair-targets.service';
 import { repairsCsv } from '../services/repairs-csv.service';
@@ -174,6 +176,14 @@ export const repairsRoutes: RoutesModule = (route) => {
     policy: write,
     ifMatch: true,
     handle: ({ deps, member, params, rev, now }) => freeSpare(deps, member, idOf(params), rev, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/fit',
+    policy: write,
+    body: fitAsItIsSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) => fitAsItIs(deps, member, idOf(params), rev, body, now),
   });
   route({
     method: 'post',

@@ -1,4 +1,5 @@
 /** The hand-over sheet of a repair: what was found, changed, read, advised and declined, as a PDF. */
+import { readingName } from '@/shared/contract/pack-reading';
 import type { PaperQuery } from '@/shared/contract/papers';
 import { groupsAt, positionsOf } from '@/shared/contract/pack';
 import type { Deps, Member } from '../deps';
@@ -9,8 +10,9 @@ import type { Paper } from '../papers/page';
 import { paperWords, type PaperWords } from '../papers/paper-words';
 import { eventsOfRepairs } from '../repositories/repair-rows.repository';
 import { bare, lowerFirst } from './charge-words';
-import { advisedWords, cautionWords, changedWords, firstName, foundWords, readingName } from './hand-over-words';
+import { advisedWords, cautionWords, changedWords, firstName, foundWords } from './hand-over-words';
 import { ampHoursOf, packVerdict } from './pack-numbers';
+import { paperPhotos } from './paper-photos';
 import { repairFacts, standing, type RepairFacts } from './repair-facts';
 import { loadRepairFile, type RepairFile } from './repair-file';
 import { repairSteps } from './repair-steps';
@@ -25,15 +27,16 @@ export async function handOverPaper(deps: Deps, member: Member, id: string, quer
   const file = await loadRepairFile(manager, member.workshopId, id);
   const [latest] = (await eventsOfRepairs(manager, member.workshopId, [id])).get(id) ?? [];
   const at = file.repair.handedOverAt ?? latest?.createdAt ?? file.repair.bookedAt;
-  const content = handOverContent(file, at, paperWords(file.workshop.zone, query.decimal ?? 'point', at));
+  const words = paperWords(file.workshop.zone, query.decimal ?? 'point', at);
+  const content = { ...handOverContent(file, at, words), photos: await paperPhotos(deps.config, file, words) };
   return {
     name: `hand-over-${file.repair.number}.pdf`,
     bytes: await drawHandOverSheet(content, query.paper ?? 'a4'),
   };
 }
 
-/** All that stands on the sheet. */
-export function handOverContent(file: RepairFile, at: number, words: PaperWords): HandOverContent {
+/** All that stands on the sheet but the photos, whose pictures lie in files. */
+function handOverContent(file: RepairFile, at: number, words: PaperWords): Omit<HandOverContent, 'photos'> {
   const { repair, people, workshop } = file;
   const facts = repairFacts(file);
   const readings = standing(file.readings).reverse();
@@ -131,9 +134,9 @@ function groupsNote(before: PackReading | null, after: PackReading | null, words
 }
 
 /** Module positions that got another module. */
-const changedPositions = ({ charges }: RepairFile): string[] =>
-  charges.flatMap(({ charge }) =>
-    charge.stage === 'fitted' && charge.modulePosition !== null ? [charge.modulePosition] : [],
+const changedPositions = ({ charges, fittedAsItIs }: RepairFile): string[] =>
+  [...charges.flatMap(({ charge }) => (charge.stage === 'fitted' ? [charge] : [])), ...fittedAsItIs].flatMap(
+    ({ modulePosition }) => (modulePosition === null ? [] : [modulePosition]),
   );
 
 function groupRows(
@@ -189,5 +192,7 @@ function footnotes(
         ...(before === null ? [] : [`Before read with ${instrument(before)}.`]),
         ...(after === null ? [] : [`After read with ${instrument(after)}.`]),
       ];
-  return [[...star, ...read].join(' ')].filter((line) => line !== '');
+  const count = file.photos.length;
+  const photos = count === 0 ? [] : [`${count === 1 ? 'One photo comes' : `${count} photos come`} after this page.`];
+  return [[...star, ...read, ...photos].join(' ')].filter((line) => line !== '');
 }

@@ -1,7 +1,9 @@
 /** The sentences of a hand-over sheet, out of the rows of its repair alone: no clock is asked. */
-import { groupsAt } from '@/shared/contract/pack';
+import { aimOf, groupsAt } from '@/shared/contract/pack';
 import { advisedOutcomeNames, moduleFateNames, repairStepNames, type RepairStepDto } from '@/shared/contract/repair';
-import type { PackReading } from '../entities/pack-reading';
+import type { FittedSpare } from '../entities/fitted-spare';
+import type { ModuleType } from '../entities/module-type';
+import type { Spare } from '../entities/spare';
 import type { NamedValue } from '../papers/hand-over-content';
 import type { PaperWords } from '../papers/paper-words';
 import { agreementOf } from './candidates.service';
@@ -9,11 +11,7 @@ import { bare, listText, lowerFirst } from './charge-words';
 import { inMillivolts, packVerdict } from './pack-numbers';
 import type { RepairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
-import { PROVEN_SPREAD_MILLIVOLTS } from './repair-steps';
 import { usedCapacity } from './spare-capacity';
-
-export const readingName = ({ stage, balanceCount }: Pick<PackReading, 'stage' | 'balanceCount'>): string =>
-  stage === 'arrival' ? 'Arrival' : stage === 'after-fit' ? 'After the fit' : `Balance charge ${balanceCount ?? 1}`;
 
 export const firstName = (file: RepairFile, personId: string): string =>
   (file.people.get(personId)?.name ?? 'somebody').split(' ')[0]!;
@@ -63,22 +61,16 @@ export function foundWords(file: RepairFile, facts: RepairFacts, words: PaperWor
 export function changedWords(file: RepairFile, steps: readonly RepairStepDto[], words: PaperWords): NamedValue[] {
   const fitted = file.charges.filter(({ charge }) => charge.stage === 'fitted').reverse();
   const rows = fitted.flatMap(({ charge, spare, type, restChecks }): NamedValue[] => {
-    const { capacityAh, source } = usedCapacity(spare, type);
     const check = restChecks.at(-1);
     const target = `${words.volts(charge.frozen.target.volts)} ${words.tolerance(charge.toleranceVolts)}`;
     const groups = check ? check.verdict.groups.map(({ volts }) => volts) : [];
-    const checked =
-      groups.length === 0
-        ? ''
-        : `, checked at ${groups.length > 4 ? `${words.voltsNumber(Math.min(...groups))} to ${words.volts(Math.max(...groups))}` : listText(groups.map(words.volts))}`;
+    const checked = groups.length === 0 ? '' : `, checked at ${groupsWords(groups, words)}`;
     return [
-      {
-        name: charge.modulePosition === null ? 'Spare fitted' : `Module ${charge.modulePosition}`,
-        value: `spare ${spare.label}, ${words.ampHours(capacityAh)} ${source === 'label' ? 'by its label' : source}`,
-      },
+      spareWords(charge.modulePosition, spare, type, words),
       { name: 'brought to', value: `${target}${checked}` },
     ];
   });
+  rows.push(...file.fittedAsItIs.toReversed().flatMap((one) => asItIsWords(file, one, words)));
   const taken = [...file.removed].reverse().map(({ modulePosition, fate, note }) => ({
     name: `Module ${modulePosition}, old`,
     value: `${lowerFirst(moduleFateNames[fate])}${note === null ? '' : `: ${bare(note)}`}`,
@@ -110,6 +102,29 @@ export function advisedWords({ advised }: RepairFile, words: PaperWords): NamedV
   });
 }
 
+function spareWords(position: string | null, spare: Spare, type: ModuleType, words: PaperWords): NamedValue {
+  const { capacityAh, source } = usedCapacity(spare, type);
+  return {
+    name: position === null ? 'Spare fitted' : `Module ${position}`,
+    value: `spare ${spare.label}, ${words.ampHours(capacityAh)} ${source === 'label' ? 'by its label' : source}`,
+  };
+}
+
+const groupsWords = (volts: readonly number[], words: PaperWords): string =>
+  volts.length > 4
+    ? `${words.voltsNumber(Math.min(...volts))} to ${words.volts(Math.max(...volts))}`
+    : listText(volts.map(words.volts));
+
+/** A spare that needed no charge: what it was held to, and what it was read at. */
+function asItIsWords({ spares, type }: RepairFile, fitted: FittedSpare, words: PaperWords): NamedValue[] {
+  const spare = spares.get(fitted.spareId);
+  const target = `${words.volts(fitted.targetVolts)} ${words.tolerance(fitted.toleranceMillivolts / 1000)}`;
+  return [
+    ...(spare && type ? [spareWords(fitted.modulePosition, spare, type, words)] : []),
+    { name: 'without a charge', value: `${target}, read at ${groupsWords(fitted.groupVolts, words)}` },
+  ];
+}
+
 /** What the owner has to mind: what holds for every pack first, then what is so of this one. */
 export function cautionWords(file: RepairFile, facts: RepairFacts, words: PaperWords): string[] {
   const found = [
@@ -122,18 +137,25 @@ export function cautionWords(file: RepairFile, facts: RepairFacts, words: PaperW
   if (facts.proof === null) found.push('The pack was not read after the work: that it is in line is not proven.');
   else {
     const { spreadMillivolts } = packVerdict(facts.proof.groupVolts, file.repair);
-    if (spreadMillivolts > PROVEN_SPREAD_MILLIVOLTS)
+    if (spreadMillivolts > aimOf(file.repair))
       found.push(
-        `The last reading still spread over ${words.millivolts(spreadMillivolts)}; ${words.millivolts(PROVEN_SPREAD_MILLIVOLTS)} is the aim.`,
+        `The last reading still spread over ${words.millivolts(spreadMillivolts)}; ${words.millivolts(aimOf(file.repair))} is the aim.`,
       );
   }
   const { fitted } = facts;
-  if (fitted !== null) {
-    const { capacityAh } = usedCapacity(fitted.spare, fitted.type);
-    const agreement = agreementOf(fitted.type, capacityAh, fitted.charge.frozen.target.volts);
+  const own = file.spares.get(facts.asItIs?.spareId ?? '');
+  const inPack =
+    fitted !== null
+      ? { spare: fitted.spare, type: fitted.type, volts: fitted.charge.frozen.target.volts }
+      : facts.asItIs !== null && own && file.type !== null
+        ? { spare: own, type: file.type, volts: facts.asItIs.targetVolts }
+        : null;
+  if (inPack !== null) {
+    const { capacityAh } = usedCapacity(inPack.spare, inPack.type);
+    const agreement = agreementOf(inPack.type, capacityAh, inPack.volts);
     const low = Math.abs(agreement?.lowMillivolts ?? 0);
-    // Under it nobody can tell the spare from its neighbours.
-    if (low >= PROVEN_SPREAD_MILLIVOLTS)
+    // Under the aim it is as good as its neighbours.
+    if (low >= aimOf(file.repair))
       found.push(
         `The spare holds another charge than its neighbours: at low charge the spread can rise to about ${words.millivolts(low)}.`,
       );

@@ -5,8 +5,8 @@ import { toInstant } from './instants';
 import type { RepairFile } from './repair-file';
 
 /** The spare that a photo shows has its label here and nothing else: its own page tells the rest. */
-export function photoDto({ people, photoSpares }: Pick<RepairFile, 'people' | 'photoSpares'>, photo: Photo): PhotoDto {
-  const spare = photoSpares.get(photo.spareId ?? '');
+export function photoDto({ people, spares }: Pick<RepairFile, 'people' | 'spares'>, photo: Photo): PhotoDto {
+  const spare = spares.get(photo.spareId ?? '');
   return {
     id: photo.id,
     at: toInstant(photo.at),

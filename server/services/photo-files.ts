@@ -13,6 +13,9 @@ const endings: Record<PhotoPart, string> = { picture: '.jpg', thumbnail: '.thumb
 const pathOf = ({ dataDir }: Kept, file: string, part: PhotoPart): string =>
   path.join(photoFolder(dataDir), `${file}${endings[part]}`);
 
+/** The name that a row gives a photo of which this is a file; null: it is the file of none. */
+export const photoFileOf = (name: string): string | null => /^([0-9a-f]{32})(?:\.thumb)?\.jpg$/.exec(name)?.[1] ?? null;
+
 /** Writes through to the disk: the row that names the file must not outlive it. */
 async function write(to: string, bytes: Buffer): Promise<void> {
   const handle = await fs.open(to, 'wx', 0o600);

@@ -7,6 +7,8 @@ export const MOST_PIXELS = 64_000_000;
 /** Longest edge of the picture as it is kept, and of its thumbnail, px. */
 const KEPT_EDGE = 2400;
 const THUMBNAIL_EDGE = 360;
+/** The same on paper, where it stands 83 mm wide: some 300 dots to the inch, a tenth of the bytes. */
+const PAPER_EDGE = 1000;
 /** Longest time one picture may take, s. */
 const MOST_SECONDS = 30;
 
@@ -78,4 +80,16 @@ export async function takePhoto(bytes: Buffer): Promise<TakenPhoto> {
       throw refused('photo_damaged', 'This picture is damaged and cannot be read. Take it again.', 400);
     }
   });
+}
+
+/** A kept picture as a paper carries it, a JPEG again; the same picture gives the same bytes. */
+export async function paperPicture(kept: Buffer): Promise<Buffer> {
+  const { default: sharp } = await import('sharp');
+  return inTurn(() =>
+    sharp(kept)
+      .resize({ width: PAPER_EDGE, height: PAPER_EDGE, fit: 'inside', withoutEnlargement: true })
+      .jpeg({ quality: 80 })
+      .timeout({ seconds: MOST_SECONDS })
+      .toBuffer(),
+  );
 }

@@ -3,6 +3,7 @@ import type { PackDto } from '@/shared/contract/pack';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type {
   AdvisedDto,
+  FittedSpareDto,
   RemovedModuleDto,
   RepairCardDto,
   RepairDto,
@@ -11,7 +12,7 @@ import type {
   RepairState,
   RepairWaitDto,
 } from '@/shared/contract/repair';
-import { positionsOf } from '@/shared/contract/pack';
+import { aimOf, positionsOf } from '@/shared/contract/pack';
 import type { Repair } from '../entities/repair';
 import type { StoredTarget } from '../entities/repair-json';
 import type { RepairWait } from '../entities/repair-wait';
@@ -29,6 +30,7 @@ import { repairFacts, type RepairFacts } from './repair-facts';
 import { loadRepairFile, type RepairFile } from './repair-file';
 import { expectedAfterFit, forecastOf } from './repair-forecast';
 import { repairSteps } from './repair-steps';
+import { spareAsItIs } from './spare-as-it-is';
 
 export const stateOf = (repair: Repair): RepairState =>
   repair.deletedAt !== null
@@ -39,13 +41,18 @@ export const stateOf = (repair: Repair): RepairState =>
         ? 'handed-over'
         : 'open';
 
-type Layout = Pick<Repair, 'moduleTypeId' | 'groupCount' | 'groupsPerModule' | 'positionOfGroup'>;
+type Pack = Pick<
+  Repair,
+  'moduleTypeId' | 'groupCount' | 'groupsPerModule' | 'positionOfGroup' | 'bleedAmps' | 'aimMillivolts'
+>;
 
-export const packDto = (pack: Layout, moduleTypeName: string | null): PackDto => ({
+export const packDto = (pack: Pack, moduleTypeName: string | null): PackDto => ({
   moduleTypeId: pack.moduleTypeId,
   groupCount: pack.groupCount,
   groupsPerModule: pack.groupsPerModule,
   positionOfGroup: pack.positionOfGroup,
+  bleedAmps: pack.bleedAmps,
+  aimMillivolts: aimOf(pack),
   moduleTypeName,
   moduleCount: new Set(positionsOf(pack)).size,
 });
@@ -117,6 +124,17 @@ const removedDto = ({ people, removed }: RepairFile): RemovedModuleDto[] =>
     by: personRef(people, personId)!,
   }));
 
+const fittedDto = ({ people, spares, fittedAsItIs }: RepairFile): FittedSpareDto[] =>
+  fittedAsItIs.map(({ id, spareId, modulePosition, groupVolts, note, at, personId }) => ({
+    id,
+    spare: { id: spareId, label: spares.get(spareId)?.label ?? '' },
+    modulePosition,
+    groupVolts,
+    note,
+    at: toInstant(at),
+    by: personRef(people, personId)!,
+  }));
+
 const advisedDto = ({ people, advised }: RepairFile): AdvisedDto[] =>
   advised.map(({ id, text, outcome, detail, agreedBy, agreedAt, at, personId }) => ({
     id,
@@ -150,6 +168,7 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
     target: targetDto(file, facts.target),
     spare: spare === null ? null : { id: spare.id, label: spare.label, shelfPlace: spare.shelfPlace },
     charges: file.charges.map((charge) => chargeCard(charge, now)),
+    fittedAsItIs: fittedDto(file),
     removed: removedDto(file),
     advised: advisedDto(file),
     wait: file.waits.map((wait) => waitDto(file, wait)),
@@ -189,8 +208,10 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
 export async function repairPage(manager: EntityManager, file: RepairFile, now: number): Promise<RepairPageDto> {
   const { id, workshopId } = file.repair;
   const events = (await eventsOfRepairs(manager, workshopId, [id])).get(id) ?? [];
+  const asItIs = await spareAsItIs(manager, file, now);
   return {
     ...repairDto(file, now),
+    asItIs: asItIs && { readAt: toInstant(asItIs.reading.at), old: asItIs.old },
     events: events.map((event): RepairEventDto => ({
       id: event.id,
       at: toInstant(event.at),

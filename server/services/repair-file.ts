@@ -1,5 +1,6 @@
 import type { EntityManager } from 'typeorm';
 import type { AdvisedItem } from '../entities/advised-item';
+import type { FittedSpare } from '../entities/fitted-spare';
 import type { ModuleType } from '../entities/module-type';
 import type { PackReading } from '../entities/pack-reading';
 import type { Photo } from '../entities/photo';
@@ -13,6 +14,7 @@ import { sparesById, typesById } from '../repositories/charge-stock.repository';
 import { listPackTypes } from '../repositories/pack-types.repository';
 import {
   advisedOfRepairs,
+  fittedOfRepairs,
   peopleOfRepairs,
   photosOfRepairs,
   readingsOfRepairs,
@@ -35,8 +37,10 @@ export interface RepairFile extends Bench {
   advised: AdvisedItem[];
   waits: RepairWait[];
   photos: Photo[];
-  /** The spares that photos show, by id. */
-  photoSpares: Map<string, Spare>;
+  /** Spares that went in without a charge. */
+  fittedAsItIs: FittedSpare[];
+  /** The spares that its own rows name, by id; a charge has its own. */
+  spares: Map<string, Spare>;
   charges: ChargeFile[];
   /** Who has fitted the module of a charge, by the charge's id. */
   fitters: Map<string, string>;
@@ -63,6 +67,7 @@ export async function loadRepairFiles(
   const sources = await sourcesOfRepairs(manager, workshopId, ids);
   const removed = await removedOfRepairs(manager, workshopId, ids);
   const photos = await photosOfRepairs(manager, workshopId, ids);
+  const asItIs = await fittedOfRepairs(manager, workshopId, ids);
   const advised = await advisedOfRepairs(manager, workshopId, ids);
   const waits = await waitsOfRepairs(manager, workshopId, ids);
   const charges = await listChargesOfRepairs(manager, workshopId, ids);
@@ -74,7 +79,7 @@ export async function loadRepairFiles(
   const spares = await sparesById(
     manager,
     workshopId,
-    given([...repairs, ...[...photos.values()].flat()].map(({ spareId }) => spareId)),
+    given([...repairs, ...[...photos.values(), ...asItIs.values()].flat()].map(({ spareId }) => spareId)),
   );
   return repairs.map((repair) => ({
     ...around,
@@ -86,7 +91,8 @@ export async function loadRepairFiles(
     advised: advised.get(repair.id) ?? [],
     waits: waits.get(repair.id) ?? [],
     photos: photos.get(repair.id) ?? [],
-    photoSpares: spares,
+    fittedAsItIs: asItIs.get(repair.id) ?? [],
+    spares,
     charges: chargeFiles.filter(({ charge }) => charge.repairId === repair.id),
     fitters,
     packTypeName: packTypes.get(repair.packTypeId ?? '') ?? null,

@@ -15,6 +15,7 @@ import type {
 } from '@/shared/contract/pack-reading';
 import { photoField, type PhotoNoteInput } from '@/shared/contract/photo';
 import type {
+  FitAsItIsInput,
   AdvisedInput,
   CandidateDto,
   ChangeRepairInput,
@@ -143,6 +144,13 @@ export const useReserveSpare = () =>
 
 export const useFreeSpare = () =>
   useRepairWrite(({ id, rev }: RepairAct) => api.delete<RepairPageDto>(`/repairs/${id}/spare`, { rev }), withSpares);
+
+/** 409 where it needs a charge, or has to be read once more first. */
+export const useFitAsItIs = () =>
+  useRepairWrite(
+    ({ id, rev, note }: FitAsItIsInput & RepairAct) => api.post<RepairPageDto>(`/repairs/${id}/fit`, { note }, { rev }),
+    withSpares,
+  );
 
 export const useRecordRemoved = () =>
   useRepairWrite(

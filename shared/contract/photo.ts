@@ -64,6 +64,10 @@ export interface PhotoDto {
   rev: number;
 }
 
+/** 'Module 17', 'S-0398', 'The pack' */
+export const photoOf = ({ modulePosition, spare }: Pick<PhotoDto, 'modulePosition' | 'spare'>): string =>
+  spare ? spare.label : modulePosition !== null ? `Module ${modulePosition}` : 'The pack';
+
 /** What a photo has shown of a module of the pack; of several the worst. */
 export interface ModuleConditionDto {
   modulePosition: string;

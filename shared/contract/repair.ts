@@ -44,6 +44,10 @@ export type ChangeRepairInput = z.infer<typeof changeRepairSchema>;
 
 export const reserveSpareSchema = z.object({ spareId: id });
 
+/** The reserved spare goes in without a charge. */
+export const fitAsItIsSchema = z.object({ note: optionalText('The note', 300) });
+export type FitAsItIsInput = z.infer<typeof fitAsItIsSchema>;
+
 export const moduleFates = ['scrap', 'quarantine', 'stock', 'went-back-in'] as const;
 export type ModuleFate = (typeof moduleFates)[number];
 export const moduleFateNames: Record<ModuleFate, string> = {
@@ -163,6 +167,18 @@ export interface RemovedModuleDto extends RemovedModuleInput {
   by: PersonRef;
 }
 
+/** A spare that was fitted without a charge. */
+export interface FittedSpareDto {
+  id: string;
+  spare: { id: string; label: string };
+  modulePosition: string | null;
+  /** By which it was within the tolerance. */
+  groupVolts: number[];
+  note: string | null;
+  at: Instant;
+  by: PersonRef;
+}
+
 export interface AdvisedDto extends AdvisedInput {
   id: string;
   at: Instant;
@@ -183,6 +199,10 @@ export interface BalanceForecastDto {
   aimMillivolts: number;
   /** Null: it does not converge, or too little is known. */
   charges: Band | null;
+  /** What one of them has on the charger, h. */
+  hoursPerCharge: number;
+  /** Spread after each of the next ones, mV; empty where nothing is forecast. */
+  expectedMillivolts: Band[];
   from: 'bleed' | 'log' | 'both' | null;
   doesNotConverge: 'capacity-spread' | 'no-change' | 'grows' | null;
 }
@@ -199,6 +219,8 @@ export interface RepairDto extends RepairCardDto, Omit<RepairInput, 'number' | '
   target: TargetDto | null;
   spare: { id: string; label: string; shelfPlace: string | null } | null;
   charges: ChargeCardDto[];
+  /** Newest first. */
+  fittedAsItIs: FittedSpareDto[];
   removed: RemovedModuleDto[];
   /** In the order in which it was advised. */
   advised: AdvisedDto[];
@@ -218,6 +240,8 @@ export interface RepairDto extends RepairCardDto, Omit<RepairInput, 'number' | '
 }
 
 export interface RepairPageDto extends RepairDto {
+  /** The reserved spare rests within the tolerance: it needs no charge. Old: it has to be read once more. Null: it is not so. */
+  asItIs: { readAt: Instant; old: boolean } | null;
   events: RepairEventDto[];
 }
 
@@ -247,6 +271,8 @@ export interface CandidateDto {
   /** Whole time to the target on the best free channel, rest and check included, s; null: it cannot. */
   seconds: Band | null;
   channelName: string | null;
+  /** False: it rests within the tolerance already and can be fitted as it is. */
+  needsCharge: boolean;
   /** Sentences: what is wrong with it, or why it cannot. */
   problems: string[];
   /** Cannot be planned for this target. */

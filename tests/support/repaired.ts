@@ -113,7 +113,7 @@ export async function addRepairs(
   const disagreeing = await posted(
     technician,
     `/api/repairs/${first.id}/second-source`,
-    secondSourceForm(packReadingId, { meterId, pointsTo: '3' }),
+    secondSourceForm(packReadingId, { pointsTo: '3' }),
   );
   const second = await read(await book());
   const waitingReadingId = second.readings[0]!.id;

@@ -8,12 +8,14 @@ import { useCandidates, useFreeSpare, useReserveSpare } from '@/shared/client/re
 import { isScanned } from '@/shared/client/scanned-spare';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { FitSheet } from '../repair/fit-sheet';
 import { ScanButton, type ScannedSpare } from '../scan/scan-button';
 import { useFormats } from '@/shared/ui/format/formats';
 import { tolerance, volts as voltsText } from '@/shared/ui/format/quantities';
 import { Button } from '@/shared/ui/primitives/button';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { CandidateRow } from '@/shared/ui/repair-spare/candidate-row';
+import { nextAsItIs } from '@/shared/ui/repair/repair-next';
 import { planHref } from '@/shared/ui/repair-spare/candidate-words';
 import { Foot } from '@/shared/ui/screen/foot';
 import { Empty } from '@/shared/ui/states/empty';
@@ -47,6 +49,8 @@ export function ChooseSpare({
   const window = type ? { lowVolts: type.dischargeLimitVolts, highVolts: type.chargeLimitVolts } : null;
   const { charge } = repair;
   const plan = charge === null ? planHref(repair) : null;
+  const asItIs = charge === null ? nextAsItIs(repair) : null;
+  const [fits, setFits] = useState(false);
   const told = { onError: (error: Error) => setProblem(sentenceOf(error)) };
   const scanned = (spare: ScannedSpare): string | null => {
     const candidate = list.data?.find(({ spareId, label }) => isScanned(spare, { id: spareId, label }));
@@ -65,6 +69,15 @@ export function ChooseSpare({
         charge ? (
           <Foot>
             <Button title="Open the charge" onPress={() => onGo(`/charges/${charge.id}`)} />
+          </Foot>
+        ) : asItIs ? (
+          <Foot note={offline ? 'No connection: it is fitted when it is back.' : undefined} noteId="fit-why">
+            <Button
+              title={asItIs.title}
+              disabled={offline && asItIs.kind !== 'go'}
+              describedBy="fit-why"
+              onPress={() => (asItIs.kind === 'go' ? onGo(asItIs.path) : setFits(true))}
+            />
           </Foot>
         ) : plan ? (
           <Foot>
@@ -138,6 +151,7 @@ export function ChooseSpare({
       ) : (
         <Loading what="the spares" onRetry={() => void list.refetch()} />
       )}
+      {fits ? <FitSheet repair={repair} onClose={() => setFits(false)} onFitted={onBack} /> : null}
     </StepScreen>
   );
 }

@@ -3,7 +3,7 @@ import { View } from 'react-native';
 import { isProblem } from '@/shared/client/api-problem';
 import { photoAddress, useNotePhoto, useRemovePhoto } from '@/shared/client/repairs';
 import { positionsOf } from '@/shared/contract/pack';
-import { photoSightNames, photoSights, type PhotoDto, type PhotoSight } from '@/shared/contract/photo';
+import { photoOf, photoSightNames, photoSights, type PhotoDto, type PhotoSight } from '@/shared/contract/photo';
 import type { RepairDto } from '@/shared/contract/repair';
 import { moment } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
@@ -14,7 +14,7 @@ import { domElement } from '@/shared/ui/primitives/dom-element';
 import { Field } from '@/shared/ui/primitives/field';
 import { Select } from '@/shared/ui/primitives/select';
 import { Txt } from '@/shared/ui/primitives/txt';
-import { photoAlt, photoOf, sightMeanings } from '@/shared/ui/repair/photo-words';
+import { photoAlt, sightMeanings } from '@/shared/ui/repair/photo-words';
 import { problemOfAct } from './act-problem';
 
 /** What a photo shows, as one value of the list: the pack, 'spare.<id>' or 'module.<position>'. */

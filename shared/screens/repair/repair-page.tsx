@@ -17,8 +17,9 @@ import { EventsPart } from '@/shared/ui/repair/events-part';
 import { FactsPart } from '@/shared/ui/repair/facts-part';
 import { PackHead } from '@/shared/ui/repair/pack-head';
 import { ReadingsPart } from '@/shared/ui/repair/readings-part';
+import { FittedPart } from '@/shared/ui/repair/fitted-part';
 import { RemovedPart } from '@/shared/ui/repair/removed-part';
-import { packWords, standing, vehicleAndBay } from '@/shared/ui/repair/repair-words';
+import { packWords, standing, unrecorded, vehicleAndBay } from '@/shared/ui/repair/repair-words';
 import { SourceLine } from '@/shared/ui/repair/source-line';
 import { StepStrip } from '@/shared/ui/repair/step-strip';
 import { WaitPart } from '@/shared/ui/repair/wait-part';
@@ -70,6 +71,7 @@ export function RepairPage({
       onGo={onGo}
       onHandOver={() => setSheet({ kind: 'hand-over' })}
       onRemoved={() => setSheet({ kind: 'removed' })}
+      onFit={() => setSheet({ kind: 'fit' })}
     />
   );
   const readings = (
@@ -84,7 +86,13 @@ export function RepairPage({
   const photos = <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />;
   const tail = (
     <>
-      <RemovedPart removed={repair.removed} now={now} />
+      <FittedPart fitted={repair.fittedAsItIs} now={now} />
+      <RemovedPart
+        removed={repair.removed}
+        missing={unrecorded(repair)}
+        now={now}
+        onRecord={mayWrite && mayAdvise ? () => setSheet({ kind: 'removed' }) : null}
+      />
       <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
       <WaitPart
         waits={repair.wait}

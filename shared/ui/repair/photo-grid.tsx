@@ -1,11 +1,11 @@
 import { Pressable, View } from 'react-native';
-import { photoSightNames, type PhotoDto } from '@/shared/contract/photo';
+import { photoOf, photoSightNames, type PhotoDto } from '@/shared/contract/photo';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { domElement } from '../primitives/dom-element';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
-import { photoAlt, photoOf } from './photo-words';
+import { photoAlt } from './photo-words';
 
 /** The photos as thumbnails with what they show; each opens the whole picture. */
 export function PhotoGrid({

@@ -1,6 +1,7 @@
 /** What is said of photos. Pure; instants are epoch ms. */
 import {
   MOST_PHOTO_BYTES,
+  photoOf,
   photoSightNames,
   type ModuleConditionDto,
   type PhotoDto,
@@ -8,10 +9,6 @@ import {
 } from '@/shared/contract/photo';
 import { moduleFateNames } from '@/shared/contract/repair';
 import { firstName } from '../charge/card-model';
-
-/** 'Module 17', 'S-0398', 'The pack' */
-export const photoOf = ({ modulePosition, spare }: Pick<PhotoDto, 'modulePosition' | 'spare'>): string =>
-  spare ? spare.label : modulePosition !== null ? `Module ${modulePosition}` : 'The pack';
 
 /** For who cannot see it: 'Photo of module 17, swelling: bulged at the left, Ines, 14:31' */
 export function photoAlt(photo: PhotoDto, at: string): string {

@@ -30,6 +30,8 @@ const packType = {
     groupCount: 96,
     groupsPerModule: 2,
     positionOfGroup: null,
+    bleedAmps: 0.12,
+    aimMillivolts: 15,
     moduleTypeName: '2-series 66 Ah',
     moduleCount: 48,
   },

@@ -28,7 +28,7 @@ export const repairOf = (more: Partial<RepairPageDto> = {}): RepairPageDto => ({
   ...{ customerContact: null, personIds: ['p1'], note: null, packTypeName: null, readings: [], sources: [] },
   pack: {
     ...{ moduleTypeId: 't1', groupCount: 4, groupsPerModule: 2, positionOfGroup: null },
-    ...{ moduleTypeName: '2-series 66 Ah', moduleCount: 2 },
+    ...{ moduleTypeName: '2-series 66 Ah', moduleCount: 2, bleedAmps: null, aimMillivolts: 10 },
   },
   steps: repairSteps.map((step) => ({ step, state: 'to-come', at: null, by: null })),
   ...{
@@ -37,6 +37,8 @@ export const repairOf = (more: Partial<RepairPageDto> = {}): RepairPageDto => ({
     spare: null,
     charges: [],
     removed: [],
+    fittedAsItIs: [],
+    asItIs: null,
     photos: [],
     advised: [],
     conditions: [],

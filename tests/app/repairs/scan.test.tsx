@@ -27,7 +27,7 @@ const target: TargetDto = {
 const candidate = (spareId: string, label: string, more = {}) => ({
   ...{ spareId, label, shelfPlace: 'D4', groupVolts: [3.655, 3.66], readAt: null, usedCapacityAh: 61 },
   ...{ capacitySource: 'measured', seconds: { p10: 11_700, p50: 13_200, p90: 15_900 }, channelName: 'A2' },
-  ...{ problems: [], ruledOut: false, reservedFor: null, agreement: null },
+  ...{ needsCharge: true, problems: [], ruledOut: false, reservedFor: null, agreement: null },
   ...more,
 });
 

@@ -241,9 +241,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
     params: { id: f.repairs.repairId, readingId: f.repairs.packReadingId },
     body: { reason: 'Another pack.' },
   })),
-  'POST /api/repairs/:id/second-source': technician(
-    repair((f) => secondSourceForm(f.repairs.packReadingId, { meterId: f.meterId })),
-  ),
+  'POST /api/repairs/:id/second-source': technician(repair((f) => secondSourceForm(f.repairs.packReadingId))),
   'POST /api/repairs/:id/second-source/:sourceId/decision': foreman((f) => ({
     params: { id: f.repairs.repairId, sourceId: f.repairs.sourceId },
     body: { decision: 'module', modulePosition: '2', reason: 'Read at the busbar.' },
@@ -257,6 +255,11 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/repairs/:id/candidates': technician(repair(undefined, 'waitingRepairId')),
   'POST /api/repairs/:id/spare': technician(repair((f) => ({ spareId: f.spareId }), 'waitingRepairId')),
   'DELETE /api/repairs/:id/spare': technician(repair(undefined, 'waitingRepairId')),
+  'POST /api/repairs/:id/fit': technician((f) => ({
+    params: { id: f.repairs.waitingRepairId },
+    body: { note: '' },
+    rev: f.repairs.waitingRev,
+  })),
   'POST /api/repairs/:id/removed': technician(
     repair(() => ({ modulePosition: '2', fate: 'scrap', note: '' }), 'waitingRepairId'),
   ),

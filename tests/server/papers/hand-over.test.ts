@@ -1,18 +1,26 @@
-import { writeFileSync } from 'node:fs';
+import fs from 'node:fs';
+import os from 'node:os';
+import path from 'node:path';
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import { readPdf } from '@/tests/support/pdf';
+import { twoHalves } from '@/tests/support/pictures';
 import { packForm } from '@/tests/support/repaired';
-import { did, hour, makeBench, type Bench } from '../charges/bench';
+import { did, hour, key, makeBench, type Bench } from '../charges/bench';
 import { arrival, chargedAndChecked, levelled, makeShop, taken, type Shop } from '../repairs/shop';
 
 let bench: Bench;
 let shop: Shop;
+let folder: string;
 beforeEach(async () => {
-  bench = await makeBench();
+  folder = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-papers-'));
+  bench = await makeBench({ config: { dataDir: folder } });
   shop = makeShop(bench);
 });
-afterEach(() => bench.server.close());
+afterEach(async () => {
+  await bench.server.close();
+  fs.rmSync(folder, { recursive: true, force: true });
+});
 
 /** Bytes of the sheet; kept where BIDEWELL_KEEP_PAPERS names a folder, to be looked at. */
 async function sheet(id: string, query = '', role: 'technician' | 'manager' = 'technician'): Promise<Buffer> {
@@ -21,8 +29,8 @@ async function sheet(id: string, query = '', role: 'technician' | 'manager' = 't
   return answer.body as Buffer;
 }
 const keep = (name: string, bytes: Buffer): void => {
-  const folder = process.env.BIDEWELL_KEEP_PAPERS;
-  if (folder) writeFileSync(`${folder}/${name}.pdf`, bytes);
+  const kept = process.env.BIDEWELL_KEEP_PAPERS;
+  if (kept) fs.writeFileSync(`${kept}/${name}.pdf`, bytes);
 };
 const flat = (text: string): string => text.replace(/\s+/g, ' ');
 
@@ -179,6 +187,51 @@ describe('the hand-over sheet', () => {
         expect(y, piece).toBeLessThanOrEqual(height - 48);
       }
     });
+  });
+
+  test('carries 7 photos, 6 on page 3 and 1 on page 4, each with what was noted, and is the same to the byte again', async () => {
+    const page = await shop.read((await shop.book()).id, arrival);
+    const to = `/api/repairs/${page.id}/photos`;
+    for (let shot = 1; shot <= 7; shot += 1) {
+      // Upright and lying ones in turn, each of its own size.
+      const size: [number, number] = shot % 2 === 0 ? [300, 400 + shot] : [400 + 2 * shot, 300];
+      const jpeg = await twoHalves(...size)
+        .jpeg()
+        .toBuffer();
+      bench.server.clock.advance(1);
+      const upload = bench.as('technician').upload(to, 'photo', jpeg, 'p.jpg');
+      const photo = (await taken(upload.set('Idempotency-Key', key()))).photos[0]!;
+      if (shot !== 2) continue;
+      bench.server.clock.advance(1);
+      const form = { caption: 'Bulged at the left', seen: 'swelling', modulePosition: '2', spareId: null };
+      await taken(bench.as('technician').patch(`/api/photos/${photo.id}`, form).set('If-Match', '"1"'));
+    }
+    const bytes = await sheet(page.id);
+    keep('photos', bytes);
+    const pages = await readPdf(bytes);
+    expect(pages.map(({ images }) => images.length)).toEqual([0, 0, 6, 1]);
+    expect(flat(pages[1]!.text)).toContain('7 photos come after this page.');
+    const third = flat(pages[2]!.text);
+    expect(third).toContain('Photo 1: The pack');
+    expect(third).toContain('Photo 2: Module 2, swelling');
+    expect(third).toContain('Bulged at the left. Technician, ');
+    expect(third).toContain('page 3 of 4');
+    expect(flat(pages[3]!.text)).toContain('Photo 7: The pack');
+    for (const { images, width, height } of pages)
+      for (const { x, y, width: wide, height: high } of images) {
+        expect([x >= 51, y >= 51, x + wide <= width - 50.9, y + high <= height - 51]).toEqual([true, true, true, true]);
+      }
+    // Red at the left and blue at the right, in the proportions of the picture that was sent.
+    const [first, second] = pages[2]!.images;
+    expect(first!.width / first!.height).toBeCloseTo(402 / 300, 2);
+    expect(second!.width / second!.height).toBeCloseTo(300 / 402, 2);
+    expect((await sheet(page.id)).equals(bytes)).toBe(true);
+
+    const [gone] = fs.readdirSync(`${folder}/photos`).filter((name) => !name.endsWith('.thumb.jpg'));
+    fs.rmSync(`${folder}/photos/${gone}`);
+    const without = await readPdf(await sheet(page.id));
+    expect(without.flatMap(({ images }) => images)).toHaveLength(6);
+    expect(flat(without.map(({ text }) => text).join(' '))).toContain('The file of this photo is gone.');
   });
 
   test('is there for every role of the workshop, and for nobody else', async () => {
