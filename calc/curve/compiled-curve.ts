@@ -1,6 +1,7 @@
 import { CalcInputError } from '../errors';
 import type { OcvTable } from '../types';
 import { pchipSlopes } from './pchip-slopes';
+import { PieceFinder } from './piece-finder';
 
 /** Numbers kept for each piece: start, U there and the three higher coefficients, and ∫U dz from the first knot. */
 export const PIECE = 6;
@@ -13,6 +14,9 @@ export interface CompiledCurve {
   knots: Float64Array;
   volts: Float64Array;
   pieces: Float64Array;
+  /** The piece that holds a state of charge, and the one that holds a voltage. */
+  ofSoc: PieceFinder;
+  ofVolts: PieceFinder;
 }
 
 const cache = new WeakMap<OcvTable, CompiledCurve>();
@@ -60,17 +64,5 @@ function build(knots: Float64Array, volts: Float64Array): CompiledCurve {
     area += h * (volts[k]! + h * (slopes[k]! / 2 + h * (square / 3 + (h * cube) / 4)));
   }
   pieces.set([knots[n - 1]!, volts[n - 1]!, slopes[n - 1]!, 0, 0, area], PIECE * n);
-  return { knots, volts, pieces };
-}
-
-/** Index of the piece that holds `value`, by halving; 0 before the first knot, the number of knots from the last on. */
-export function pieceAt(column: Float64Array, value: number): number {
-  let low = 0;
-  let high = column.length;
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if (column[middle]! <= value) low = middle + 1;
-    else high = middle;
-  }
-  return low;
+  return { knots, volts, pieces, ofSoc: new PieceFinder(knots), ofVolts: new PieceFinder(volts) };
 }

@@ -1,7 +1,7 @@
 import { CalcInputError } from '../errors';
 import { requireFinite } from '../require';
 import type { OcvTable } from '../types';
-import { compileCurve, PIECE, pieceAt } from './compiled-curve';
+import { compileCurve, PIECE, type CompiledCurve } from './compiled-curve';
 
 /**
  * Open-circuit voltage of one cell, V: PCHIP through the table, straight beyond its ends.
@@ -11,8 +11,12 @@ import { compileCurve, PIECE, pieceAt } from './compiled-curve';
  * @example voltsAtSoc({ soc: [0, 1], volts: [3, 4] }, 0.25) === 3.25
  */
 export function voltsAtSoc(table: OcvTable, soc: number): number {
-  const { knots, pieces } = compileCurve(table);
-  const p = PIECE * pieceAt(knots, requireFinite('soc', soc));
+  return curveVolts(compileCurve(table), requireFinite('soc', soc));
+}
+
+/** The same of a table that was made ready, a number taken as given. */
+export function curveVolts({ ofSoc, pieces }: CompiledCurve, soc: number): number {
+  const p = PIECE * ofSoc.at(soc);
   const x = soc - pieces[p]!;
   return pieces[p + 1]! + x * (pieces[p + 2]! + x * (pieces[p + 3]! + x * pieces[p + 4]!));
 }
@@ -24,8 +28,8 @@ export function voltsAtSoc(table: OcvTable, soc: number): number {
  * @example slopeAtSoc({ soc: [0, 1], volts: [3, 4] }, 0.25) === 1
  */
 export function slopeAtSoc(table: OcvTable, soc: number): number {
-  const { knots, pieces } = compileCurve(table);
-  const p = PIECE * pieceAt(knots, requireFinite('soc', soc));
+  const { ofSoc, pieces } = compileCurve(table);
+  const p = PIECE * ofSoc.at(requireFinite('soc', soc));
   const x = soc - pieces[p]!;
   return pieces[p + 2]! + x * (2 * pieces[p + 3]! + x * 3 * pieces[p + 4]!);
 }
@@ -39,7 +43,7 @@ export function slopeAtSoc(table: OcvTable, soc: number): number {
 export function socAtVolts(table: OcvTable, volts: number): number {
   const curve = compileCurve(table);
   const { pieces } = curve;
-  const k = pieceAt(curve.volts, requireFinite('volts', volts));
+  const k = curve.ofVolts.at(requireFinite('volts', volts));
   const p = PIECE * k;
   const rise = volts - pieces[p + 1]!;
   if (rise === 0) return pieces[p]!;

@@ -1,5 +1,5 @@
-import { compileCurve, PIECE, pieceAt } from '../curve/compiled-curve';
-import { slopeAtSoc } from '../curve/ocv';
+import { compileCurve } from '../curve/compiled-curve';
+import { curveVolts, slopeAtSoc } from '../curve/ocv';
 import type { PlanModel } from '../plan/plan-model';
 import { chargerSd } from '../plan/sample-run';
 import { SAMPLE_AXES, type Sample } from '../plan/samples';
@@ -54,16 +54,13 @@ function restVoltsIn(
   model: PlanModel,
 ): (observation: Observation, groups: number[], shares: number[]) => (sample: Sample) => number {
   const curve = compileCurve(model.curve);
-  const { knots, pieces } = curve;
   return ({ movedAh }, groups, shares) => {
     const inside = groups.map((group) => (movedAh[group]! > 0 ? movedAh[group]! * model.efficiency : movedAh[group]!));
     return (sample) => {
       let soc = 0;
       for (let at = 0; at < groups.length; at += 1)
         soc += shares[at]! * (sample.startSoc[groups[at]!]! + inside[at]! / sample.capacityAh[groups[at]!]!);
-      const p = PIECE * pieceAt(knots, soc);
-      const x = soc - pieces[p]!;
-      return pieces[p + 1]! + x * (pieces[p + 2]! + x * (pieces[p + 3]! + x * pieces[p + 4]!)) - sample.curveShiftVolts;
+      return curveVolts(curve, soc) - sample.curveShiftVolts;
     };
   };
 }
