@@ -1,4 +1,5 @@
 import type { PlanModel } from '../plan/plan-model';
+import { sampleOf } from '../plan/samples';
 import { splitLongResistance } from '../resistance/long-resistance';
 import { LIVE_SPREADS } from './live-spreads';
 import { MODEL_AXIS } from './live-draws';
@@ -33,13 +34,15 @@ export function learnedModel(
       capacityAh: model.nominal.capacityAh.map((ampHours) => ampHours * capacity),
       longOhm: model.nominal.longOhm.map((ohm) => ohm * resistance),
     },
-    samples: set.samples.map((sample, at) => {
+    samples: Array.from(set.weights, (_, at) => {
+      const sample = sampleOf(model.basis, set.drawsOf(at));
       const shared = set.sharedOf('volts', at);
       const variance = kept ** 2 * (shared.variance ?? 0) + 1 - kept ** 2;
       const error = kept * shared.mean + Math.sqrt(variance) * sample.draws[MODEL_AXIS]!;
       // The error under current is one of the resistance, as it is then.
       const factor = Math.max(LEAST_FACTOR, 1 + LIVE_SPREADS.modelRelative * error);
-      return { ...sample, longOhm: sample.longOhm.map((ohm) => ohm * factor) };
+      for (let group = 0; group < sample.longOhm.length; group += 1) sample.longOhm[group]! *= factor;
+      return sample;
     }),
     weights: set.weights,
   };

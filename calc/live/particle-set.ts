@@ -1,10 +1,9 @@
-import type { PlanModel } from '../plan/plan-model';
-import type { Sample } from '../plan/samples';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { choleskyLower, effectiveSampleSize, systematicResample } from '../statistics/particle-weights';
 import { seededRandom } from '../statistics/seeded-random';
 import { weightedCovariance } from '../statistics/weighted-covariance';
-import { liveDraws, liveSample, readAxes } from './live-draws';
+import { liveDraws, LIVE_AXES } from './live-draws';
+import type { LiveFacts, Residual } from './live-facts';
 import { posteriorOf } from './posterior';
 
 /** Resampled below this share of the samples. */
@@ -26,9 +25,9 @@ const MEMORY_COUNT = 4;
 /** One kind of reading under the samples: what was read less what each sample has for it. */
 export interface Look {
   memory: Memory;
-  residual: (sample: Sample) => number;
+  residual: Residual;
   /** Where it is not known which of two things was read: what was read less the other; both are as likely. */
-  otherResidual?: (sample: Sample) => number;
+  otherResidual?: Residual;
   /** What one standard deviation of the error that the readings share makes here. */
   sharedSd: number;
   /** Share of it that is left since the last reading of the kind. */
@@ -47,14 +46,16 @@ export interface Look {
  * share. A hundred readings that share an error are therefore worth little more than one.
  */
 export class ParticleSet {
-  samples: Sample[];
   weights: Float64Array;
+  /** `LIVE_AXES` a sample. */
+  private draws: Float64Array;
+  /** What the looks see of each. */
+  private rows: Float64Array;
   /** The looks that were taken in, in their order. */
   private readonly taken: Look[] = [];
   /** What the shared errors are likely to be, one a kind and sample. */
   private memory: Float64Array;
   private readonly variance = [NaN, NaN, NaN, NaN];
-  private readonly axes: number[];
   private readonly random: () => number;
   /** Room for one number of each sample. */
   private values: Float64Array;
@@ -66,31 +67,45 @@ export class ParticleSet {
   /** Any reading was taken in. */
   read = false;
 
-  /** @param count of the samples that judge each reading by those before it */
+  /**
+   * @param axes that readings say something of
+   * @param count of the samples that judge each reading by those before it
+   */
   constructor(
-    private readonly model: PlanModel,
+    private readonly facts: LiveFacts,
+    private readonly axes: readonly number[],
     private count: number,
     private readonly seed: number,
   ) {
-    this.samples = liveDraws(count, seed).map((draws) => liveSample(model, draws));
+    this.draws = liveDraws(count, seed).slice();
+    this.rows = facts.rowsOf(this.draws);
     this.weights = new Float64Array(count).fill(1 / count);
     this.memory = new Float64Array(count * MEMORY_COUNT);
     this.values = new Float64Array(count);
     this.prior = new Float64Array(count);
     this.off = new Float64Array(count);
     this.log = new Float64Array(count);
-    this.axes = readAxes(model);
     this.random = seededRandom(seed + 1);
   }
 
-  /** Mean and variance of a number over the samples. */
-  moments(of: (sample: Sample, at: number) => number): { mean: number; variance: number } {
-    const { samples, weights, count, values } = this;
+  /** Of one sample, in the order of `LIVE_AXES`. */
+  drawsOf(at: number): number[] {
+    const own: number[] = [];
+    for (let axis = 0; axis < LIVE_AXES; axis += 1) own.push(this.draws[at * LIVE_AXES + axis]!);
+    return own;
+  }
+
+  /** Mean and variance of a number over the samples, by their facts from `row` on. */
+  moments(of: (rows: Float64Array, row: number) => number): { mean: number; variance: number } {
+    const { width } = this.facts;
+    for (let at = 0; at < this.count; at += 1) this.values[at] = of(this.rows, at * width);
+    return this.momentsOf(this.values);
+  }
+
+  private momentsOf(values: Float64Array): { mean: number; variance: number } {
+    const { weights, count } = this;
     let mean = 0;
-    for (let at = 0; at < count; at += 1) {
-      values[at] = of(samples[at]!, at);
-      mean += weights[at]! * values[at]!;
-    }
+    for (let at = 0; at < count; at += 1) mean += weights[at]! * values[at]!;
     let variance = 0;
     for (let at = 0; at < count; at += 1) variance += weights[at]! * (values[at]! - mean) ** 2;
     return { mean, variance };
@@ -114,36 +129,39 @@ export class ParticleSet {
    * where the readings before it have it (`jump`, null for the first of its kind).
    */
   offOf(look: Look, jumpSd: number): { level: number; jump: number | null } {
+    const { memory, count, values } = this;
     const column = MEMORIES[look.memory];
     const nearer = this.nearerResidual(look);
-    const level = this.moments((_, at) => nearer[at]!);
+    const level = this.momentsOf(nearer);
     const whole = Math.sqrt(level.variance + look.sharedSd ** 2 + look.ownVariance);
     if (Number.isNaN(this.variance[column]!)) return { level: level.mean / whole, jump: null };
     const kept = look.keptSmooth ?? look.kept;
-    const step = this.moments((_, at) => nearer[at]! - look.sharedSd * kept * this.memory[at * MEMORY_COUNT + column]!);
+    for (let at = 0; at < count; at += 1)
+      values[at] = nearer[at]! - look.sharedSd * kept * memory[at * MEMORY_COUNT + column]!;
+    const step = this.momentsOf(values);
     const shared = look.sharedSd ** 2 * this.before(look, kept);
     const small = Math.sqrt(step.variance + shared + look.ownVariance + jumpSd ** 2);
     return { level: level.mean / whole, jump: step.mean / small };
   }
 
+  /** What was read less what the samples have for it, mean. */
+  meanOff = (look: Look): number => this.momentsOf(this.residualsOf(look).residual).mean;
+
   private nearerResidual(look: Look): Float64Array {
     const { residual, other } = this.residualsOf(look);
     if (other === null) return residual;
-    const far = (of: Float64Array): number => Math.abs(this.moments((_, at) => of[at]!).mean);
+    const far = (of: Float64Array): number => Math.abs(this.momentsOf(of).mean);
     return far(residual) <= far(other) ? residual : other;
   }
 
   /** A look is judged before it is taken in: what the samples have for it is worked out once. */
   private residualsOf(look: Look): { residual: Float64Array; other: Float64Array | null } {
     if (this.asked?.look === look) return this.asked;
-    const { residual, otherResidual } = look;
-    const values = new Float64Array(this.count);
-    const others = otherResidual ? new Float64Array(this.count) : null;
-    for (let at = 0; at < this.count; at += 1) {
-      values[at] = residual(this.samples[at]!);
-      if (others) others[at] = otherResidual!(this.samples[at]!);
-    }
-    this.asked = { look, residual: values, other: others };
+    const residual = new Float64Array(this.count);
+    this.facts.residuals(look.residual, this.rows, residual);
+    const other = look.otherResidual ? new Float64Array(this.count) : null;
+    if (other) this.facts.residuals(look.otherResidual!, this.rows, other);
+    this.asked = { look, residual, other };
     return this.asked;
   }
 
@@ -242,26 +260,28 @@ export class ParticleSet {
    */
   settle(count: number): void {
     if (!this.read) return;
-    const settled = posteriorOf(this.model, this.taken, liveDraws(count, this.seed), this.axes);
+    const settled = posteriorOf(this.facts, this.taken, liveDraws(count, this.seed), this.axes);
     this.count = count;
     this.values = new Float64Array(count);
-    this.samples = settled.samples;
+    this.draws = settled.draws;
+    this.rows = settled.rows;
     this.weights = settled.weights;
     this.memory = settled.memory;
     this.asked = null;
   }
 
   private resample(): void {
-    const { axes, count, weights } = this;
+    const { axes, count, weights, draws } = this;
     // Errors that nothing was read of yet are the same in all.
     const columns = this.variance.flatMap((one, column) => (Number.isNaN(one) ? [] : [column]));
     const size = axes.length + columns.length;
     const rows = new Float64Array(count * size);
     const mean = new Float64Array(size);
     for (let at = 0; at < count; at += 1) {
-      const { draws } = this.samples[at]!;
+      const own = at * LIVE_AXES;
       for (let k = 0; k < size; k += 1) {
-        const value = k < axes.length ? draws[axes[k]!]! : this.memory[at * MEMORY_COUNT + columns[k - axes.length]!]!;
+        const value =
+          k < axes.length ? draws[own + axes[k]!]! : this.memory[at * MEMORY_COUNT + columns[k - axes.length]!]!;
         rows[at * size + k] = value;
         mean[k]! += weights[at]! * value;
       }
@@ -273,14 +293,14 @@ export class ParticleSet {
     for (let at = 0; at < count; at += 1) {
       const from = picked[at]! * size;
       for (let k = 0; k < size; k += 1) noise[k] = JITTER * inverseNormal(Math.max(1e-12, this.random()));
-      const draws = this.samples[at]!.draws.slice();
+      const own = at * LIVE_AXES;
       for (let k = 0; k < size; k += 1) {
         let value = mean[k]! + SHRINK * (rows[from + k]! - mean[k]!);
         for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * noise[j]!;
-        if (k < axes.length) draws[axes[k]!] = value;
+        if (k < axes.length) draws[own + axes[k]!] = value;
         else memory[at * MEMORY_COUNT + columns[k - axes.length]!] = value;
       }
-      this.samples[at] = liveSample(this.model, draws);
+      this.facts.write(draws, this.rows, at);
     }
     this.memory = memory;
     this.asked = null;

@@ -1,7 +1,8 @@
+import { compileCurve } from '../curve/compiled-curve';
 import { voltsAtSoc } from '../curve/ocv';
 import type { OcvTable } from '../types';
 import type { Doubt, Spreads } from '../plan-types';
-import { socOf } from './soc-of';
+import { socOf, socOfCurve } from './soc-of';
 import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { latinHypercube, latinHypercubeNormal } from '../statistics/latin-hypercube';
@@ -106,59 +107,90 @@ export function drawSamples(basis: SampleBasis, count: number, seed: number): Sa
 export const SAMPLE_AXES: readonly Axis[] = AXES;
 const PLACE = Object.fromEntries(AXES.map((axis, at) => [axis, at])) as Record<Axis, number>;
 
+/** What one set of draws makes of the spare, all its groups alike. */
+export interface SpareDrawn {
+  capacityFactor: number;
+  resistanceFactor: number;
+  currentFactor: number;
+  /** As in a sample, V per group. */
+  curveShiftVolts: number;
+  spareMeterVolts: number;
+  spareShiftVolts: number;
+  /** Charge lost on the shelf, as a share of the capacity. */
+  lostSoc: number;
+}
+
+/** @param from where the draws begin, in the order of `SAMPLE_AXES` */
+export function spareDrawn(basis: SampleBasis, draws: ArrayLike<number>, from = 0): SpareDrawn {
+  const { spreads } = basis;
+  const drawn = (axis: Axis): number => draws[from + PLACE[axis]]!;
+  const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * drawn('temperature')));
+  const curveShiftVolts = -spreads.curveVolts * drawn('curve');
+  const spareMeterVolts = spreads.meterVolts * drawn('spare-meter');
+  return {
+    capacityFactor: Math.exp(spreads.capacityRelative * drawn('capacity')),
+    resistanceFactor:
+      Math.exp(spreads.resistanceRelative * drawn('resistance')) *
+      (resistanceTemperatureFactor(celsius) / resistanceTemperatureFactor(basis.celsius)),
+    currentFactor: Math.exp(spreads.currentRelative * drawn('current')),
+    curveShiftVolts,
+    spareMeterVolts,
+    spareShiftVolts:
+      curveShiftVolts +
+      spareMeterVolts +
+      (spreads.readingVolts * drawn('spare-scatter')) / Math.sqrt(basis.readVolts.length) +
+      hysteresisOf(spreads, drawn('spare-hysteresis')),
+    lostSoc: basis.lostSoc * Math.exp(spreads.selfDischargeRelative * drawn('self-discharge')),
+  };
+}
+
+/** Where each group of the spare stands at the clip-on in one sample. */
+export function startSocs({ curve, readVolts }: SampleBasis, { spareShiftVolts, lostSoc }: SpareDrawn): number[] {
+  const ready = compileCurve(curve);
+  const soc: number[] = [];
+  for (let group = 0; group < readVolts.length; group += 1) {
+    const volts = readVolts[group]!;
+    // Groups read alike stand alike.
+    const alike = group > 0 && volts === readVolts[group - 1]!;
+    soc.push(alike ? soc[group - 1]! : socOfCurve(ready, volts + spareShiftVolts) - lostSoc);
+  }
+  return soc;
+}
+
 /** The module of one set of standard normal draws, in the order of `SAMPLE_AXES`. */
 export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
   const { spreads, curve } = basis;
-  const count = basis.readVolts.length;
-  const capacityFactor = Math.exp(spreads.capacityRelative * draws[PLACE.capacity]!);
-  const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * draws[PLACE.temperature]!));
-  const resistanceFactor =
-    Math.exp(spreads.resistanceRelative * draws[PLACE.resistance]!) *
-    (resistanceTemperatureFactor(celsius) / resistanceTemperatureFactor(basis.celsius));
-  const curveShift = -spreads.curveVolts * draws[PLACE.curve]!;
-  const spareMeter = spreads.meterVolts * draws[PLACE['spare-meter']]!;
-  const targetMeter = basis.sameMeter ? spareMeter : spreads.meterVolts * draws[PLACE['target-meter']]!;
-  const spareShift =
-    curveShift +
-    spareMeter +
-    (spreads.readingVolts * draws[PLACE['spare-scatter']]!) / Math.sqrt(count) +
-    hysteresisOf(spreads, draws[PLACE['spare-hysteresis']]!);
+  const drawn = spareDrawn(basis, draws);
+  const { curveShiftVolts, spareMeterVolts } = drawn;
+  const targetMeter = basis.sameMeter ? spareMeterVolts : spreads.meterVolts * draws[PLACE['target-meter']]!;
   const targetScatter = draws[PLACE['target-scatter']]!;
   const bySoc = basis.targetSoc ?? null;
   const ownTargetSoc = bySoc === null ? null : bySoc.soc + bySoc.sd * targetScatter;
   const targetShiftVolts =
     ownTargetSoc !== null
       ? voltsAtSoc(curve, ownTargetSoc) - basis.targetVolts
-      : curveShift +
+      : curveShiftVolts +
         targetMeter +
         spreads.targetVolts * targetScatter +
         hysteresisOf(spreads, draws[PLACE['target-hysteresis']]!);
-  const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * draws[PLACE['self-discharge']]!);
-  const startSoc = new Array<number>(count);
-  const capacityAh = new Array<number>(count);
-  const longOhm = new Array<number>(count);
-  for (let group = 0; group < count; group += 1) {
-    const volts = basis.readVolts[group]!;
-    // Groups read alike stand alike.
-    startSoc[group] =
-      group > 0 && volts === basis.readVolts[group - 1]!
-        ? startSoc[group - 1]!
-        : socOf(curve, volts + spareShift) - lost;
-    capacityAh[group] = basis.capacityAh[group]! * capacityFactor;
-    longOhm[group] = basis.longOhm[group]! * resistanceFactor;
-  }
   return {
-    startSoc,
+    startSoc: startSocs(basis, drawn),
     targetSoc: ownTargetSoc ?? socOf(curve, basis.targetVolts + targetShiftVolts),
-    capacityAh,
-    longOhm,
-    currentFactor: Math.exp(spreads.currentRelative * draws[PLACE.current]!),
-    spareShiftVolts: spareShift,
+    capacityAh: times(basis.capacityAh, drawn.capacityFactor),
+    longOhm: times(basis.longOhm, drawn.resistanceFactor),
+    currentFactor: drawn.currentFactor,
+    spareShiftVolts: drawn.spareShiftVolts,
     targetShiftVolts,
-    curveShiftVolts: curveShift,
+    curveShiftVolts,
     chargerDraw: draws[PLACE['charger-meter']]!,
     draws,
   };
+}
+
+function times(values: readonly number[], factor: number): number[] {
+  const result: number[] = [];
+  for (let at = 0; at < values.length; at += 1) result.push(values[at]! * factor);
+  return result;
 }
 
 const hysteresisOf = ({ hysteresisVolts }: Spreads, draw: number): number =>

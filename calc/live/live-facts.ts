@@ -1,0 +1,163 @@
+import { compileCurve, type CompiledCurve } from '../curve/compiled-curve';
+import { curveVolts } from '../curve/ocv';
+import type { ChannelParameters } from '../plan-types';
+import type { PlanModel } from '../plan/plan-model';
+import { SAMPLE_AXES, spareDrawn, startSocs } from '../plan/samples';
+import { LEADS_AXIS, LIVE_AXES } from './live-draws';
+import { LIVE_SPREADS } from './live-spreads';
+import type { Observation } from './observations';
+
+/** What readings see of a sample, as numbers in a row; the charge of each place follows after them. */
+export const FACTS = {
+  /** Capacity and resistance over the nominal ones. */
+  capacity: 0,
+  resistance: 1,
+  /** Of a source's current over what it is set to. */
+  current: 2,
+  /** What any true voltage is more on the curve, V per group. */
+  curveVolts: 3,
+  /** Standard deviations that the spare's meter, a charger's own and the temperature are off. */
+  spareMeter: 4,
+  chargerMeter: 5,
+  temperature: 6,
+  /** Leads over what was entered, and those that nobody has entered, ohm. */
+  leads: 7,
+  unknownLeadOhm: 8,
+} as const;
+const FACT_COUNT = 9;
+
+const SPARE_METER = SAMPLE_AXES.indexOf('spare-meter');
+const CHARGER_METER = SAMPLE_AXES.indexOf('charger-meter');
+const TEMPERATURE = SAMPLE_AXES.indexOf('temperature');
+
+/** Groups whose mean rest voltage a reading sees, each with its share in it. */
+export interface Place {
+  groups: readonly number[];
+  shares: readonly number[];
+}
+
+/** What was read less what a sample has for it: straight in its facts, but for the curve. */
+export interface Residual {
+  /** What was read, less what is the same in all samples. */
+  read: number;
+  /** The place whose rest voltage is taken off; −1: none. */
+  place: number;
+  /** Charge that has gone into it, as a share of the nominal capacity. */
+  movedSoc: number;
+  /** What one of each fact adds. */
+  slopes: Float64Array;
+}
+
+/** Slopes of a residual, 0 where nothing is said. */
+export function slopesOf(by: Partial<Record<keyof typeof FACTS, number>>): Float64Array {
+  const slopes = new Float64Array(FACT_COUNT);
+  for (const [fact, slope] of Object.entries(by)) slopes[FACTS[fact as keyof typeof FACTS]] = slope;
+  return slopes;
+}
+
+/** Ohm of a channel's leads by the facts (leadOhmOf). */
+export function leadSlopes({ leadResistanceOhm, senses }: ChannelParameters): {
+  leads: number;
+  unknownLeadOhm: number;
+} {
+  if (leadResistanceOhm > 0) return { leads: leadResistanceOhm, unknownLeadOhm: 0 };
+  return { leads: 0, unknownLeadOhm: senses === 'module' ? 0 : 1 };
+}
+
+const sameNumbers = (some: readonly number[], others: readonly number[]): boolean =>
+  some.length === others.length && some.every((one, at) => one === others[at]);
+
+/** All groups of a module alike. */
+export const wholePlace = (model: PlanModel): Place => ({
+  groups: model.groups.map((_, group) => group),
+  shares: model.groups.map(() => 1 / model.groups.length),
+});
+
+/** The places that readings of a charge see. */
+export function placesOf(model: PlanModel, observations: readonly Observation[]): Place[] {
+  const places: Place[] = [];
+  const add = (place: Place): void => {
+    if (!places.some((one) => isSame(one, place))) places.push(place);
+  };
+  for (const { circuit, atRest } of observations) {
+    if (circuit) add(circuit);
+    if (atRest) add(wholePlace(model));
+  }
+  return places;
+}
+
+const isSame = (one: Place, other: Place): boolean =>
+  sameNumbers(one.groups, other.groups) && sameNumbers(one.shares, other.shares);
+
+/** Makes the facts of samples from their draws. */
+export class LiveFacts {
+  /** Numbers a sample. */
+  readonly width: number;
+  private readonly curve: CompiledCurve;
+  private readonly nominalOhm: number;
+
+  constructor(
+    private readonly model: PlanModel,
+    private readonly places: readonly Place[],
+  ) {
+    this.width = FACT_COUNT + places.length;
+    this.curve = compileCurve(model.curve);
+    this.nominalOhm = model.nominal.longOhm[0]!;
+  }
+
+  /** The facts of one sample into its row. */
+  write(draws: Float64Array, rows: Float64Array, at: number): void {
+    const { basis } = this.model;
+    const from = at * LIVE_AXES;
+    const row = at * this.width;
+    const drawn = spareDrawn(basis, draws, from);
+    const leads = draws[from + LEADS_AXIS]!;
+    rows[row + FACTS.capacity] = drawn.capacityFactor;
+    rows[row + FACTS.resistance] = (basis.longOhm[0]! * drawn.resistanceFactor) / this.nominalOhm;
+    rows[row + FACTS.current] = drawn.currentFactor;
+    rows[row + FACTS.curveVolts] = drawn.curveShiftVolts;
+    rows[row + FACTS.spareMeter] = draws[from + SPARE_METER]!;
+    rows[row + FACTS.chargerMeter] = draws[from + CHARGER_METER]!;
+    rows[row + FACTS.temperature] = draws[from + TEMPERATURE]!;
+    rows[row + FACTS.leads] = Math.exp(LIVE_SPREADS.leadRelative * leads);
+    rows[row + FACTS.unknownLeadOhm] = LIVE_SPREADS.leadUnknownOhm * Math.max(0, leads);
+    if (this.places.length === 0) return;
+    const soc = startSocs(basis, drawn);
+    for (let place = 0; place < this.places.length; place += 1) {
+      const { groups, shares } = this.places[place]!;
+      let mean = 0;
+      for (let k = 0; k < groups.length; k += 1) mean += shares[k]! * soc[groups[k]!]!;
+      rows[row + FACT_COUNT + place] = mean;
+    }
+  }
+
+  /** The facts of all samples of a set of draws. */
+  rowsOf(draws: Float64Array): Float64Array {
+    const count = draws.length / LIVE_AXES;
+    const rows = new Float64Array(count * this.width);
+    for (let at = 0; at < count; at += 1) this.write(draws, rows, at);
+    return rows;
+  }
+
+  /** The place of a residual, and the charge that has gone into it. */
+  at(place: Place, movedAh: readonly number[]): Pick<Residual, 'place' | 'movedSoc'> {
+    const { efficiency, basis } = this.model;
+    const movedSoc = place.groups.reduce((sum, group, k) => {
+      const moved = movedAh[group]!;
+      return sum + (place.shares[k]! * (moved > 0 ? moved * efficiency : moved)) / basis.capacityAh[group]!;
+    }, 0);
+    return { place: this.places.findIndex((one) => isSame(one, place)), movedSoc };
+  }
+
+  /** A residual in each of so many samples. */
+  residuals({ read, place, movedSoc, slopes }: Residual, rows: Float64Array, into: Float64Array): void {
+    const { width, curve } = this;
+    const soc = FACT_COUNT + place;
+    for (let at = 0, row = 0; row < rows.length; at += 1, row += width) {
+      let left = read;
+      for (let fact = 0; fact < FACT_COUNT; fact += 1) left += slopes[fact]! * rows[row + fact]!;
+      if (place >= 0) left -= curveVolts(curve, rows[row + soc]! + movedSoc / rows[row + FACTS.capacity]!);
+      into[at] = left;
+    }
+  }
+}
