@@ -24,7 +24,8 @@ export const FACTS = {
   leads: 7,
   unknownLeadOhm: 8,
 } as const;
-const FACT_COUNT = 9;
+const FACT_NAMES = Object.keys(FACTS) as (keyof typeof FACTS)[];
+const FACT_COUNT = FACT_NAMES.length;
 
 const SPARE_METER = SAMPLE_AXES.indexOf('spare-meter');
 const CHARGER_METER = SAMPLE_AXES.indexOf('charger-meter');
@@ -51,7 +52,7 @@ export interface Residual {
 /** Slopes of a residual, 0 where nothing is said. */
 export function slopesOf(by: Partial<Record<keyof typeof FACTS, number>>): Float64Array {
   const slopes = new Float64Array(FACT_COUNT);
-  for (const [fact, slope] of Object.entries(by)) slopes[FACTS[fact as keyof typeof FACTS]] = slope;
+  for (const fact of FACT_NAMES) slopes[FACTS[fact]] = by[fact] ?? 0;
   return slopes;
 }
 
@@ -65,7 +66,7 @@ export function leadSlopes({ leadResistanceOhm, senses }: ChannelParameters): {
 }
 
 const sameNumbers = (some: readonly number[], others: readonly number[]): boolean =>
-  some.length === others.length && some.every((one, at) => one === others[at]);
+  some === others || (some.length === others.length && some.every((one, at) => one === others[at]));
 
 /** All groups of a module alike. */
 export const wholePlace = (model: PlanModel): Place => ({

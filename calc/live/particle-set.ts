@@ -62,8 +62,10 @@ export class ParticleSet {
   private readonly prior: Float64Array;
   private readonly off: Float64Array;
   private readonly log: Float64Array;
-  /** Of the look that was asked for last and these samples: what was read less what each has, and less the other. */
-  private asked: { look: Look; residual: Float64Array; other: Float64Array | null } | null = null;
+  /** The look that was asked for last, and of it what was read less what each sample has, and less the other. */
+  private asked: Look | null = null;
+  private residual: Float64Array;
+  private other: Float64Array;
   /** Any reading was taken in. */
   read = false;
 
@@ -85,6 +87,8 @@ export class ParticleSet {
     this.prior = new Float64Array(count);
     this.off = new Float64Array(count);
     this.log = new Float64Array(count);
+    this.residual = new Float64Array(count);
+    this.other = new Float64Array(count);
     this.random = seededRandom(seed + 1);
   }
 
@@ -145,24 +149,25 @@ export class ParticleSet {
   }
 
   /** What was read less what the samples have for it, mean. */
-  meanOff = (look: Look): number => this.momentsOf(this.residualsOf(look).residual).mean;
+  meanOff(look: Look): number {
+    this.ask(look);
+    return this.momentsOf(this.residual).mean;
+  }
 
   private nearerResidual(look: Look): Float64Array {
-    const { residual, other } = this.residualsOf(look);
-    if (other === null) return residual;
+    this.ask(look);
+    const { residual, other } = this;
+    if (!look.otherResidual) return residual;
     const far = (of: Float64Array): number => Math.abs(this.momentsOf(of).mean);
     return far(residual) <= far(other) ? residual : other;
   }
 
   /** A look is judged before it is taken in: what the samples have for it is worked out once. */
-  private residualsOf(look: Look): { residual: Float64Array; other: Float64Array | null } {
-    if (this.asked?.look === look) return this.asked;
-    const residual = new Float64Array(this.count);
-    this.facts.residuals(look.residual, this.rows, residual);
-    const other = look.otherResidual ? new Float64Array(this.count) : null;
-    if (other) this.facts.residuals(look.otherResidual!, this.rows, other);
-    this.asked = { look, residual, other };
-    return this.asked;
+  private ask(look: Look): void {
+    if (this.asked === look) return;
+    this.asked = look;
+    this.facts.residuals(look.residual, this.rows, this.residual);
+    if (look.otherResidual) this.facts.residuals(look.otherResidual, this.rows, this.other);
   }
 
   /** Reweights by a look; resamples with jitter where the effective sample size falls below half. */
@@ -175,9 +180,7 @@ export class ParticleSet {
     let left = 1;
     this.lookAt(look, variance);
     for (let part = 0; left > 0; part += 1) {
-      const share = part === MOST_PARTS ? left : this.bearable(left);
-      this.reweigh(share);
-      left -= share;
+      left -= this.reweigh(left, part === MOST_PARTS);
       if (effectiveSampleSize(this.weights) <= LEAST_SHARE * this.count * 1.001) {
         this.resample();
         this.lookAt(look, variance);
@@ -191,66 +194,65 @@ export class ParticleSet {
 
   /** Of each sample: what it expects of the shared error, how far off the look is then, and the logarithm of its likelihood. */
   private lookAt(look: Look, variance: number): void {
+    this.ask(look);
+    const { count, memory, prior, off, log, residual, other } = this;
     const column = MEMORIES[look.memory];
-    const known = !Number.isNaN(this.variance[column]!);
-    const { residual, other: others } = this.residualsOf(look);
-    for (let at = 0; at < this.count; at += 1) {
-      const prior = known ? look.kept * this.memory[at * MEMORY_COUNT + column]! : 0;
-      this.prior[at] = prior;
-      const off = residual[at]! - look.sharedSd * prior;
-      if (others === null) {
-        this.off[at] = off;
-        this.log[at] = (-0.5 * off * off) / variance;
-        continue;
-      }
-      const other = others[at]! - look.sharedSd * prior;
-      const [near, far] = Math.abs(off) <= Math.abs(other) ? [off, other] : [other, off];
+    const kept = Number.isNaN(this.variance[column]!) ? 0 : look.kept;
+    for (let at = 0; at < count; at += 1) {
+      prior[at] = kept * memory[at * MEMORY_COUNT + column]!;
+      off[at] = residual[at]! - look.sharedSd * prior[at]!;
+      log[at] = (-0.5 * off[at]! * off[at]!) / variance;
+    }
+    if (!look.otherResidual) return;
+    for (let at = 0; at < count; at += 1) {
+      const own = off[at]!;
+      const second = other[at]! - look.sharedSd * prior[at]!;
+      const near = Math.abs(own) <= Math.abs(second) ? own : second;
+      const far = near === own ? second : own;
       const ratio = Math.exp((-0.5 * (far * far - near * near)) / variance);
-      this.off[at] = (near + ratio * far) / (1 + ratio);
-      this.log[at] = (-0.5 * near * near) / variance + Math.log((1 + ratio) / 2);
+      off[at] = (near + ratio * far) / (1 + ratio);
+      log[at] = (-0.5 * near * near) / variance + Math.log((1 + ratio) / 2);
     }
   }
 
-  /** The largest share of what is left of a look that keeps half the samples effective. */
-  private bearable(left: number): number {
+  /**
+   * Takes in the largest share of what is left of a look that keeps half the samples effective.
+   *
+   * @param whole takes it all, come what may
+   * @returns the share
+   */
+  private reweigh(left: number, whole: boolean): number {
     const least = LEAST_SHARE * this.count;
-    if (this.sizeAfter(left) >= least) return left;
-    let low = 0;
-    let high = left;
-    for (let pass = 0; pass < 12; pass += 1) {
-      const middle = (low + high) / 2;
-      if (this.sizeAfter(middle) >= least) low = middle;
-      else high = middle;
+    const most = this.log.reduce((high, one) => Math.max(high, one), -Infinity);
+    let share = left;
+    if (this.weighedBy(left, most) < least && !whole) {
+      let low = 0;
+      for (let pass = 0; pass < 12; pass += 1) {
+        const middle = (low + share) / 2;
+        if (this.weighedBy(middle, most) >= least) low = middle;
+        else share = middle;
+      }
+      this.weighedBy(share, most);
     }
-    return high;
+    const { count, weights, values } = this;
+    let sum = 0;
+    for (let at = 0; at < count; at += 1) sum += values[at]!;
+    for (let at = 0; at < count; at += 1) weights[at] = values[at]! / sum;
+    return share;
   }
 
-  private most(): number {
-    let most = -Infinity;
-    for (let at = 0; at < this.count; at += 1) if (this.log[at]! > most) most = this.log[at]!;
-    return most;
-  }
-
-  private sizeAfter(share: number): number {
-    const most = this.most();
+  /** What the samples weigh after a share of the look, into `values`, and how many are effective then. */
+  private weighedBy(share: number, most: number): number {
+    const { count, weights, values, log } = this;
     let sum = 0;
     let squares = 0;
-    for (let at = 0; at < this.count; at += 1) {
-      const weight = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
+    for (let at = 0; at < count; at += 1) {
+      const weight = weights[at]! * Math.exp(share * (log[at]! - most));
+      values[at] = weight;
       sum += weight;
       squares += weight * weight;
     }
     return (sum * sum) / squares;
-  }
-
-  private reweigh(share: number): void {
-    const most = this.most();
-    let sum = 0;
-    for (let at = 0; at < this.count; at += 1) {
-      this.weights[at] = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
-      sum += this.weights[at]!;
-    }
-    for (let at = 0; at < this.count; at += 1) this.weights[at] = this.weights[at]! / sum;
   }
 
   /**
@@ -263,6 +265,8 @@ export class ParticleSet {
     const settled = posteriorOf(this.facts, this.taken, liveDraws(count, this.seed), this.axes);
     this.count = count;
     this.values = new Float64Array(count);
+    this.residual = new Float64Array(count);
+    this.other = new Float64Array(count);
     this.draws = settled.draws;
     this.rows = settled.rows;
     this.weights = settled.weights;

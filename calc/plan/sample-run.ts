@@ -42,7 +42,7 @@ export type SampleRun = (sample: Sample) => { seconds: number; ampHours: number 
  */
 export function sampleRun(input: SampleRunInput): SampleRun {
   const { source, sign, count, aimVolts, endAmps } = input;
-  const known = new WeakMap<Sample, { seconds: number; ampHours: number }>();
+  const known = new Map<Sample, { seconds: number; ampHours: number }>();
   return (sample) => {
     const before = known.get(sample);
     if (before) return before;
