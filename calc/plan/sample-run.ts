@@ -55,6 +55,7 @@ export function sampleRun(input: SampleRunInput): SampleRun {
     const startAmps = input.startAmps ?? null;
     const law: CurrentLaw = {
       openVolts: (ampHours) => stringVolts(string, ampHours),
+      ampHoursTo: (volts) => ampHoursToVolts(string, volts),
       sign,
       maxAmps: (source.maxAmps ?? Infinity) * sample.currentFactor ** (input.currentWidening ?? 1),
       setVolts: startAmps === null ? asSet : stringVolts(string, 0) + sign * startAmps * resistanceOhm,
