@@ -44,7 +44,7 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     learned: NOTHING_LEARNED,
     learnedUnderCurrent: NOTHING_LEARNED,
   };
-  if (kept.length === 0 || model.samples.length === 1) return followed;
+  if (kept.length === 0 || model.sampleCount === 1) return followed;
   const observations = observationsOf(model, past, kept);
   const facts = new LiveFacts(model, placesOf(model, observations));
   const set = new ParticleSet(facts, readAxes(model), JUDGES, seed);
@@ -92,7 +92,7 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     }
     if (takeIn(set, looks, at, since, terminal)) voltsSoc = soc;
   }
-  set.settle(Math.max(PARTICLES, model.samples.length));
+  set.settle(Math.max(PARTICLES, model.sampleCount));
   return {
     ...followed,
     set: set.read ? set : null,

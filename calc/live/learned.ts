@@ -1,7 +1,6 @@
 import type { Learned, Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import type { ChannelParameters } from '../plan-types';
-import { FACTS, leadSlopes } from './live-facts';
+import { leadSlopes, slopesOf } from './live-facts';
 import type { LivePast } from './live-rounds';
 import type { ParticleSet } from './particle-set';
 import { mean } from '../statistics/mean';
@@ -11,12 +10,9 @@ const LEARNED_SHARE = 0.2;
 
 export const NOTHING_LEARNED: Reckoning['learned'] = { capacityAh: null, longOhm: null, leadOhm: null };
 
-/** A number of one sample by its facts, which begin at `row`. */
-type FactsTo = (rows: Float64Array, row: number) => number;
-
 /** What the samples of a charge say of its module and leads, before the readings and after. */
 export class Learns {
-  private readonly numbers: Record<keyof Reckoning['learned'], FactsTo | null>;
+  private readonly numbers: Record<keyof Reckoning['learned'], Float64Array | null>;
   private readonly prior: Record<keyof Reckoning['learned'], { mean: number; variance: number } | null>;
 
   /** @param set not read yet */
@@ -28,12 +24,10 @@ export class Learns {
     const round = past.begun[past.begun.length - 1];
     const step = round?.lanes.length === 1 ? round.lanes[0]!.step : null;
     const channel = model.input.channels.find((one) => one.channelId === step?.channelIds[0]);
-    const capacityAh = mean(model.basis.capacityAh);
-    const longOhm = mean(model.nominal.longOhm);
     this.numbers = {
-      capacityAh: (rows, row) => capacityAh * rows[row + FACTS.capacity]!,
-      longOhm: (rows, row) => longOhm * rows[row + FACTS.resistance]!,
-      leadOhm: channel ? leadOhmOf(channel) : null,
+      capacityAh: slopesOf({ capacity: mean(model.basis.capacityAh) }),
+      longOhm: slopesOf({ resistance: mean(model.nominal.longOhm) }),
+      leadOhm: channel ? slopesOf(leadSlopes(channel)) : null,
     };
     this.prior = {
       capacityAh: this.moments('capacityAh'),
@@ -62,10 +56,4 @@ export class Learns {
       priorSd: Math.sqrt(prior.variance),
     };
   }
-}
-
-/** The leads of a channel, ohm. */
-function leadOhmOf(channel: ChannelParameters): FactsTo {
-  const { leads, unknownLeadOhm } = leadSlopes(channel);
-  return (rows, row) => leads * rows[row + FACTS.leads]! + unknownLeadOhm * rows[row + FACTS.unknownLeadOhm]!;
 }

@@ -7,7 +7,7 @@ import { LEADS_AXIS, LIVE_AXES } from './live-draws';
 import { LIVE_SPREADS } from './live-spreads';
 import type { Observation } from './observations';
 
-/** What readings see of a sample, as numbers in a row; the charge of each place follows after them. */
+/** What readings see of the samples, a column each; the charge of each place follows after them. */
 export const FACTS = {
   /** Capacity and resistance over the nominal ones. */
   capacity: 0,
@@ -48,6 +48,9 @@ export interface Residual {
   /** What one of each fact adds. */
   slopes: Float64Array;
 }
+
+/** Of a residual without a rest voltage. */
+export const NO_PLACE = { place: -1, movedSoc: 0 } as const;
 
 /** Slopes of a residual, 0 where nothing is said. */
 export function slopesOf(by: Partial<Record<keyof typeof FACTS, number>>): Float64Array {
@@ -92,8 +95,7 @@ const isSame = (one: Place, other: Place): boolean =>
 
 /** Makes the facts of samples from their draws. */
 export class LiveFacts {
-  /** Numbers a sample. */
-  readonly width: number;
+  private readonly width: number;
   private readonly curve: CompiledCurve;
   private readonly nominalOhm: number;
 
@@ -106,38 +108,38 @@ export class LiveFacts {
     this.nominalOhm = model.nominal.longOhm[0]!;
   }
 
-  /** The facts of one sample into its row. */
-  write(draws: Float64Array, rows: Float64Array, at: number): void {
+  /** The facts of one sample into their columns. */
+  write(draws: Float64Array, columns: Float64Array, at: number): void {
     const { basis } = this.model;
     const from = at * LIVE_AXES;
-    const row = at * this.width;
+    const count = columns.length / this.width;
     const drawn = spareDrawn(basis, draws, from);
     const leads = draws[from + LEADS_AXIS]!;
-    rows[row + FACTS.capacity] = drawn.capacityFactor;
-    rows[row + FACTS.resistance] = (basis.longOhm[0]! * drawn.resistanceFactor) / this.nominalOhm;
-    rows[row + FACTS.current] = drawn.currentFactor;
-    rows[row + FACTS.curveVolts] = drawn.curveShiftVolts;
-    rows[row + FACTS.spareMeter] = draws[from + SPARE_METER]!;
-    rows[row + FACTS.chargerMeter] = draws[from + CHARGER_METER]!;
-    rows[row + FACTS.temperature] = draws[from + TEMPERATURE]!;
-    rows[row + FACTS.leads] = Math.exp(LIVE_SPREADS.leadRelative * leads);
-    rows[row + FACTS.unknownLeadOhm] = LIVE_SPREADS.leadUnknownOhm * Math.max(0, leads);
+    columns[FACTS.capacity * count + at] = drawn.capacityFactor;
+    columns[FACTS.resistance * count + at] = (basis.longOhm[0]! * drawn.resistanceFactor) / this.nominalOhm;
+    columns[FACTS.current * count + at] = drawn.currentFactor;
+    columns[FACTS.curveVolts * count + at] = drawn.curveShiftVolts;
+    columns[FACTS.spareMeter * count + at] = draws[from + SPARE_METER]!;
+    columns[FACTS.chargerMeter * count + at] = draws[from + CHARGER_METER]!;
+    columns[FACTS.temperature * count + at] = draws[from + TEMPERATURE]!;
+    columns[FACTS.leads * count + at] = Math.exp(LIVE_SPREADS.leadRelative * leads);
+    columns[FACTS.unknownLeadOhm * count + at] = LIVE_SPREADS.leadUnknownOhm * Math.max(0, leads);
     if (this.places.length === 0) return;
     const soc = startSocs(basis, drawn);
     for (let place = 0; place < this.places.length; place += 1) {
       const { groups, shares } = this.places[place]!;
       let mean = 0;
       for (let k = 0; k < groups.length; k += 1) mean += shares[k]! * soc[groups[k]!]!;
-      rows[row + FACT_COUNT + place] = mean;
+      columns[(FACT_COUNT + place) * count + at] = mean;
     }
   }
 
   /** The facts of all samples of a set of draws. */
-  rowsOf(draws: Float64Array): Float64Array {
+  columnsOf(draws: Float64Array): Float64Array {
     const count = draws.length / LIVE_AXES;
-    const rows = new Float64Array(count * this.width);
-    for (let at = 0; at < count; at += 1) this.write(draws, rows, at);
-    return rows;
+    const columns = new Float64Array(count * this.width);
+    for (let at = 0; at < count; at += 1) this.write(draws, columns, at);
+    return columns;
   }
 
   /** The place of a residual, and the charge that has gone into it. */
@@ -151,14 +153,20 @@ export class LiveFacts {
   }
 
   /** A residual in each of so many samples. */
-  residuals({ read, place, movedSoc, slopes }: Residual, rows: Float64Array, into: Float64Array): void {
-    const { width, curve } = this;
-    const soc = FACT_COUNT + place;
-    for (let at = 0, row = 0; row < rows.length; at += 1, row += width) {
-      let left = read;
-      for (let fact = 0; fact < FACT_COUNT; fact += 1) left += slopes[fact]! * rows[row + fact]!;
-      if (place >= 0) left -= curveVolts(curve, rows[row + soc]! + movedSoc / rows[row + FACTS.capacity]!);
-      into[at] = left;
+  residuals({ read, place, movedSoc, slopes }: Residual, columns: Float64Array, into: Float64Array): void {
+    const { curve } = this;
+    const count = into.length;
+    into.fill(read);
+    for (let fact = 0; fact < FACT_COUNT; fact += 1) {
+      const slope = slopes[fact]!;
+      if (slope === 0) continue;
+      const from = fact * count;
+      for (let at = 0; at < count; at += 1) into[at] = into[at]! + slope * columns[from + at]!;
     }
+    if (place < 0) return;
+    const soc = (FACT_COUNT + place) * count;
+    const capacity = FACTS.capacity * count;
+    for (let at = 0; at < count; at += 1)
+      into[at] = into[at]! - curveVolts(curve, columns[soc + at]! + movedSoc / columns[capacity + at]!);
   }
 }

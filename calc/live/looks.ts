@@ -1,13 +1,10 @@
 import { slopeAtSoc } from '../curve/ocv';
 import type { PlanModel } from '../plan/plan-model';
 import { chargerSd } from '../plan/sample-run';
-import { leadSlopes, slopesOf, wholePlace, type LiveFacts, type Residual } from './live-facts';
+import { leadSlopes, NO_PLACE, slopesOf, wholePlace, type LiveFacts, type Residual } from './live-facts';
 import { LIVE_SPREADS } from './live-spreads';
 import type { Circuit, Observation } from './observations';
 import type { Look } from './particle-set';
-
-/** Of a residual without a rest voltage. */
-const NO_PLACE = { place: -1, movedSoc: 0 } as const;
 
 /** A look at the voltage between the clips. */
 export interface TerminalLook extends Look {

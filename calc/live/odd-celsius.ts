@@ -1,5 +1,5 @@
 import type { PlanModel } from '../plan/plan-model';
-import { FACTS } from './live-facts';
+import { slopesOf } from './live-facts';
 import { LIVE_SPREADS } from './live-spreads';
 import type { Observation } from './observations';
 import { ODD_OFF, type OddLook } from './odd-run';
@@ -25,8 +25,7 @@ export function oddCelsius(model: PlanModel, set: ParticleSet, at: Observation, 
   const expected = start.celsius + (at.ownHeatKelvin - start.ownHeatKelvin) + fromRoom;
   const startSd =
     from === null
-      ? model.spreads.temperatureCelsius *
-        Math.sqrt(set.moments((rows, row) => rows[row + FACTS.temperature]!).variance)
+      ? model.spreads.temperatureCelsius * Math.sqrt(set.moments(slopesOf({ temperature: 1 })).variance)
       : LIVE_SPREADS.celsius;
   const off = (celsius - expected) / Math.hypot(startSd, LIVE_SPREADS.celsius, LIVE_SPREADS.celsiusDrift);
   if (off < ODD_OFF) return null;

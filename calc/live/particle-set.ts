@@ -3,7 +3,7 @@ import { choleskyLower, effectiveSampleSize, systematicResample } from '../stati
 import { seededRandom } from '../statistics/seeded-random';
 import { weightedCovariance } from '../statistics/weighted-covariance';
 import { liveDraws, LIVE_AXES } from './live-draws';
-import type { LiveFacts, Residual } from './live-facts';
+import { NO_PLACE, type LiveFacts, type Residual } from './live-facts';
 import { posteriorOf } from './posterior';
 
 /** Resampled below this share of the samples. */
@@ -50,10 +50,10 @@ export class ParticleSet {
   /** `LIVE_AXES` a sample. */
   private draws: Float64Array;
   /** What the looks see of each. */
-  private rows: Float64Array;
+  private columns: Float64Array;
   /** The looks that were taken in, in their order. */
   private readonly taken: Look[] = [];
-  /** What the shared errors are likely to be, one a kind and sample. */
+  /** What the shared errors are likely to be, of all samples kind by kind. */
   private memory: Float64Array;
   private readonly variance = [NaN, NaN, NaN, NaN];
   private readonly random: () => number;
@@ -80,7 +80,7 @@ export class ParticleSet {
     private readonly seed: number,
   ) {
     this.draws = liveDraws(count, seed).slice();
-    this.rows = facts.rowsOf(this.draws);
+    this.columns = facts.columnsOf(this.draws);
     this.weights = new Float64Array(count).fill(1 / count);
     this.memory = new Float64Array(count * MEMORY_COUNT);
     this.values = new Float64Array(count);
@@ -99,10 +99,9 @@ export class ParticleSet {
     return own;
   }
 
-  /** Mean and variance of a number over the samples, by their facts from `row` on. */
-  moments(of: (rows: Float64Array, row: number) => number): { mean: number; variance: number } {
-    const { width } = this.facts;
-    for (let at = 0; at < this.count; at += 1) this.values[at] = of(this.rows, at * width);
+  /** Mean and variance over the samples of a number that is straight in their facts. */
+  moments(slopes: Float64Array): { mean: number; variance: number } {
+    this.facts.residuals({ read: 0, ...NO_PLACE, slopes }, this.columns, this.values);
     return this.momentsOf(this.values);
   }
 
@@ -119,7 +118,7 @@ export class ParticleSet {
   sharedOf(memory: Memory, at: number): { mean: number; variance: number | null } {
     const column = MEMORIES[memory];
     const variance = this.variance[column]!;
-    return { mean: this.memory[at * MEMORY_COUNT + column]!, variance: Number.isNaN(variance) ? null : variance };
+    return { mean: this.memory[column * this.count + at]!, variance: Number.isNaN(variance) ? null : variance };
   }
 
   /** Variance of the shared error before a look, of the whole of it. */
@@ -141,7 +140,7 @@ export class ParticleSet {
     if (Number.isNaN(this.variance[column]!)) return { level: level.mean / whole, jump: null };
     const kept = look.keptSmooth ?? look.kept;
     for (let at = 0; at < count; at += 1)
-      values[at] = nearer[at]! - look.sharedSd * kept * memory[at * MEMORY_COUNT + column]!;
+      values[at] = nearer[at]! - look.sharedSd * kept * memory[column * count + at]!;
     const step = this.momentsOf(values);
     const shared = look.sharedSd ** 2 * this.before(look, kept);
     const small = Math.sqrt(step.variance + shared + look.ownVariance + jumpSd ** 2);
@@ -166,8 +165,8 @@ export class ParticleSet {
   private ask(look: Look): void {
     if (this.asked === look) return;
     this.asked = look;
-    this.facts.residuals(look.residual, this.rows, this.residual);
-    if (look.otherResidual) this.facts.residuals(look.otherResidual, this.rows, this.other);
+    this.facts.residuals(look.residual, this.columns, this.residual);
+    if (look.otherResidual) this.facts.residuals(look.otherResidual, this.columns, this.other);
   }
 
   /** Reweights by a look; resamples with jitter where the effective sample size falls below half. */
@@ -188,7 +187,7 @@ export class ParticleSet {
     }
     const gain = (look.sharedSd * before) / variance;
     for (let at = 0; at < this.count; at += 1)
-      this.memory[at * MEMORY_COUNT + column] = this.prior[at]! + gain * this.off[at]!;
+      this.memory[column * this.count + at] = this.prior[at]! + gain * this.off[at]!;
     this.variance[column] = (1 - gain * look.sharedSd) * before;
   }
 
@@ -199,7 +198,7 @@ export class ParticleSet {
     const column = MEMORIES[look.memory];
     const kept = Number.isNaN(this.variance[column]!) ? 0 : look.kept;
     for (let at = 0; at < count; at += 1) {
-      prior[at] = kept * memory[at * MEMORY_COUNT + column]!;
+      prior[at] = kept * memory[column * count + at]!;
       off[at] = residual[at]! - look.sharedSd * prior[at]!;
       log[at] = (-0.5 * off[at]! * off[at]!) / variance;
     }
@@ -268,7 +267,7 @@ export class ParticleSet {
     this.residual = new Float64Array(count);
     this.other = new Float64Array(count);
     this.draws = settled.draws;
-    this.rows = settled.rows;
+    this.columns = settled.columns;
     this.weights = settled.weights;
     this.memory = settled.memory;
     this.asked = null;
@@ -284,8 +283,7 @@ export class ParticleSet {
     for (let at = 0; at < count; at += 1) {
       const own = at * LIVE_AXES;
       for (let k = 0; k < size; k += 1) {
-        const value =
-          k < axes.length ? draws[own + axes[k]!]! : this.memory[at * MEMORY_COUNT + columns[k - axes.length]!]!;
+        const value = k < axes.length ? draws[own + axes[k]!]! : this.memory[columns[k - axes.length]! * count + at]!;
         rows[at * size + k] = value;
         mean[k]! += weights[at]! * value;
       }
@@ -302,9 +300,9 @@ export class ParticleSet {
         let value = mean[k]! + SHRINK * (rows[from + k]! - mean[k]!);
         for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * noise[j]!;
         if (k < axes.length) draws[own + axes[k]!] = value;
-        else memory[at * MEMORY_COUNT + columns[k - axes.length]!] = value;
+        else memory[columns[k - axes.length]! * count + at] = value;
       }
-      this.facts.write(draws, this.rows, at);
+      this.facts.write(draws, this.columns, at);
     }
     this.memory = memory;
     this.asked = null;

@@ -25,9 +25,9 @@ export interface Posterior {
   /** `LIVE_AXES` a sample. */
   draws: Float64Array;
   /** Their facts. */
-  rows: Float64Array;
+  columns: Float64Array;
   weights: Float64Array;
-  /** `MEMORY_COUNT` a sample. */
+  /** Of all samples kind by kind. */
   memory: Float64Array;
 }
 
@@ -60,7 +60,7 @@ function chainOf(looks: readonly Look[]): Chain[] {
  * way: look by look, since all samples go through the same.
  */
 class Offs {
-  /** What each sample has for the shared errors in the end, `MEMORY_COUNT` a sample. */
+  /** What each sample has for the shared errors in the end, of all samples kind by kind. */
   readonly memory: Float64Array;
   /** Of the looks one after the other, `count` each. */
   readonly off: Float64Array;
@@ -78,17 +78,17 @@ class Offs {
     this.other = new Float64Array(count);
   }
 
-  /** @param rows facts of the samples */
-  follow(rows: Float64Array): void {
+  /** @param columns facts of the samples */
+  follow(columns: Float64Array): void {
     const { facts, chain, count, memory, off, residual, other } = this;
     memory.fill(0);
     for (let row = 0; row < chain.length; row += 1) {
       const { look, column, kept, gain, perSd } = chain[row]!;
       const { sharedSd, otherResidual } = look;
-      facts.residuals(look.residual, rows, residual);
-      if (otherResidual) facts.residuals(otherResidual, rows, other);
+      facts.residuals(look.residual, columns, residual);
+      if (otherResidual) facts.residuals(otherResidual, columns, other);
       for (let at = 0; at < count; at += 1) {
-        const place = at * MEMORY_COUNT + column;
+        const place = column * count + at;
         const prior = kept * memory[place]!;
         let own = residual[at]! - sharedSd * prior;
         if (otherResidual) {
@@ -138,14 +138,14 @@ export function posteriorOf(
       }
       logs[at] = log;
     }
-    const rows = facts.rowsOf(draws);
+    const columns = facts.columnsOf(draws);
     const offs = new Offs(facts, chain, count);
-    offs.follow(rows);
+    offs.follow(columns);
     for (let from = 0; from < offs.off.length; from += count)
       for (let at = 0; at < count; at += 1) logs[at] = logs[at]! - 0.5 * offs.off[from + at]! ** 2;
     const weights = weightsOf(logs, 1);
     const worth = effectiveSampleSize(weights);
-    if (best === null || worth > best.worth) best = { draws, rows, weights, memory: offs.memory, worth };
+    if (best === null || worth > best.worth) best = { draws, columns, weights, memory: offs.memory, worth };
     if (round === MOST_ROUNDS || worth >= ENOUGH_SHARE * count) return best;
     ({ centre, lower } = about(values, flattened(logs, COUNT_AN_AXIS * size), size));
   }
@@ -189,7 +189,7 @@ function fit(facts: LiveFacts, chain: readonly Chain[], axes: readonly number[])
   const worthOf = (x: Float64Array): number => {
     const own = new Float64Array(LIVE_AXES);
     for (let k = 0; k < size; k += 1) own[axes[k]!] = x[k]!;
-    one.follow(facts.rowsOf(own));
+    one.follow(facts.columnsOf(own));
     return squares(one.off) + squares(x);
   };
   for (let step = 0; step < MOST_STEPS; step += 1) {
@@ -198,7 +198,7 @@ function fit(facts: LiveFacts, chain: readonly Chain[], axes: readonly number[])
     const near = new Float64Array(size * LIVE_AXES);
     for (let k = 0; k < size; k += 1)
       for (let j = 0; j < size; j += 1) near[k * LIVE_AXES + axes[j]!] = centre[j]! + (j === k ? NUDGE : 0);
-    nudged.follow(facts.rowsOf(near));
+    nudged.follow(facts.columnsOf(near));
     for (let row = 0; row < looks; row += 1)
       for (let k = 0; k < size; k += 1) slopes[row * size + k] = (nudged.off[row * size + k]! - base[row]!) / NUDGE;
     normal.fill(0);
