@@ -2,7 +2,14 @@ import { compileCurve, type CompiledCurve } from '../curve/compiled-curve';
 import { curveVolts } from '../curve/ocv';
 import type { ChannelParameters } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
-import { SAMPLE_AXES, spareDrawn, startSocs } from '../plan/samples';
+import {
+  capacityFactor,
+  currentFactor,
+  curveShiftVolts,
+  resistanceFactor,
+  SAMPLE_AXES,
+  startSocs,
+} from '../plan/samples';
 import { LEADS_AXIS, LIVE_AXES } from './live-draws';
 import { LIVE_SPREADS } from './live-spreads';
 import type { Observation } from './observations';
@@ -98,6 +105,8 @@ export class LiveFacts {
   private readonly width: number;
   private readonly curve: CompiledCurve;
   private readonly nominalOhm: number;
+  /** Room for the groups of one sample. */
+  private readonly startSoc: number[] = [];
 
   constructor(
     private readonly model: PlanModel,
@@ -113,19 +122,19 @@ export class LiveFacts {
     const { basis } = this.model;
     const from = at * LIVE_AXES;
     const count = columns.length / this.width;
-    const drawn = spareDrawn(basis, draws, from);
     const leads = draws[from + LEADS_AXIS]!;
-    columns[FACTS.capacity * count + at] = drawn.capacityFactor;
-    columns[FACTS.resistance * count + at] = (basis.longOhm[0]! * drawn.resistanceFactor) / this.nominalOhm;
-    columns[FACTS.current * count + at] = drawn.currentFactor;
-    columns[FACTS.curveVolts * count + at] = drawn.curveShiftVolts;
+    columns[FACTS.capacity * count + at] = capacityFactor(basis, draws, from);
+    columns[FACTS.resistance * count + at] =
+      (basis.longOhm[0]! * resistanceFactor(basis, draws, from)) / this.nominalOhm;
+    columns[FACTS.current * count + at] = currentFactor(basis, draws, from);
+    columns[FACTS.curveVolts * count + at] = curveShiftVolts(basis, draws, from);
     columns[FACTS.spareMeter * count + at] = draws[from + SPARE_METER]!;
     columns[FACTS.chargerMeter * count + at] = draws[from + CHARGER_METER]!;
     columns[FACTS.temperature * count + at] = draws[from + TEMPERATURE]!;
     columns[FACTS.leads * count + at] = Math.exp(LIVE_SPREADS.leadRelative * leads);
     columns[FACTS.unknownLeadOhm * count + at] = LIVE_SPREADS.leadUnknownOhm * Math.max(0, leads);
     if (this.places.length === 0) return;
-    const soc = startSocs(basis, drawn);
+    const soc = startSocs(basis, draws, from, this.startSoc);
     for (let place = 0; place < this.places.length; place += 1) {
       const { groups, shares } = this.places[place]!;
       let mean = 0;

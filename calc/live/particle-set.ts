@@ -222,7 +222,8 @@ export class ParticleSet {
    */
   private reweigh(left: number, whole: boolean): number {
     const least = LEAST_SHARE * this.count;
-    const most = this.log.reduce((high, one) => Math.max(high, one), -Infinity);
+    let most = -Infinity;
+    for (let at = 0; at < this.count; at += 1) most = Math.max(most, this.log[at]!);
     let share = left;
     if (this.weighedBy(left, most) < least && !whole) {
       let low = 0;

@@ -149,12 +149,20 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     moved: (state, fromAmps, toAmps, seconds) => {
       if (seconds <= 0) return state;
       const ampHours = ((fromAmps + toAmps) / 2) * (seconds / 3600);
-      return spread(
-        state,
-        seconds,
-        parts.map((part, at) => socOf(state, at) + (sign * efficiency * ampHours) / part.capacityAh),
-        parts.map((part, at) => overAfter(part, overOf(state, at), sign * fromAmps, sign * toAmps, seconds)),
-      );
+      const soc: number[] = [];
+      const over: number[] = [];
+      let tau = NaN;
+      let decay = NaN;
+      for (let at = 0; at < parts.length; at += 1) {
+        const part = parts[at]!;
+        if (part.polarisationTimeConstantS !== tau) {
+          tau = part.polarisationTimeConstantS;
+          decay = Math.exp(-seconds / tau);
+        }
+        soc.push(socOf(state, at) + (sign * efficiency * ampHours) / part.capacityAh);
+        over.push(overAfter(part, overOf(state, at), sign * fromAmps, sign * toAmps, seconds, decay));
+      }
+      return spread(state, seconds, soc, over);
     },
     clipVolts: (state, amps) => voltsOf(state).volts + sign * amps * moduleOhm,
     isNearEnd: (state, amps) => {
@@ -178,12 +186,22 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
   };
 }
 
-/** Over-voltage after a current that goes straight from one value to another: the RC branch in closed form. */
-function overAfter(group: CellGroup, over: number, fromAmps: number, toAmps: number, seconds: number): number {
+/**
+ * Over-voltage after a current that goes straight from one value to another: the RC branch in closed form.
+ *
+ * @param decay e^(−t/τ) of those seconds
+ */
+function overAfter(
+  group: CellGroup,
+  over: number,
+  fromAmps: number,
+  toAmps: number,
+  seconds: number,
+  decay: number,
+): number {
   const { polarisationResistanceOhm: ohm, polarisationTimeConstantS: tau } = group;
   if (!(tau > 0)) return 0;
   const slope = (toAmps - fromAmps) / seconds;
-  const decay = Math.exp(-seconds / tau);
   const lag = ohm * slope * tau;
   return (over - ohm * fromAmps + lag) * decay + ohm * toAmps - lag;
 }

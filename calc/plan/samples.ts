@@ -107,81 +107,73 @@ export function drawSamples(basis: SampleBasis, count: number, seed: number): Sa
 export const SAMPLE_AXES: readonly Axis[] = AXES;
 const PLACE = Object.fromEntries(AXES.map((axis, at) => [axis, at])) as Record<Axis, number>;
 
-/** What one set of draws makes of the spare, all its groups alike. */
-export interface SpareDrawn {
-  capacityFactor: number;
-  resistanceFactor: number;
-  currentFactor: number;
-  /** As in a sample, V per group. */
-  curveShiftVolts: number;
-  spareMeterVolts: number;
-  spareShiftVolts: number;
-  /** Charge lost on the shelf, as a share of the capacity. */
-  lostSoc: number;
+/** Capacity of one set of draws over the nominal one. The draws begin at `from`, in the order of `SAMPLE_AXES`. */
+export const capacityFactor = ({ spreads }: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  Math.exp(spreads.capacityRelative * draws[from + PLACE.capacity]!);
+
+/** Resistance over the nominal one. */
+export function resistanceFactor({ spreads, celsius }: SampleBasis, draws: ArrayLike<number>, from = 0): number {
+  const own = Math.min(119, Math.max(-59, celsius + spreads.temperatureCelsius * draws[from + PLACE.temperature]!));
+  return (
+    Math.exp(spreads.resistanceRelative * draws[from + PLACE.resistance]!) *
+    (resistanceTemperatureFactor(own) / resistanceTemperatureFactor(celsius))
+  );
 }
 
-/** @param from where the draws begin, in the order of `SAMPLE_AXES` */
-export function spareDrawn(basis: SampleBasis, draws: ArrayLike<number>, from = 0): SpareDrawn {
-  const { spreads } = basis;
-  const drawn = (axis: Axis): number => draws[from + PLACE[axis]]!;
-  const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * drawn('temperature')));
-  const curveShiftVolts = -spreads.curveVolts * drawn('curve');
-  const spareMeterVolts = spreads.meterVolts * drawn('spare-meter');
-  return {
-    capacityFactor: Math.exp(spreads.capacityRelative * drawn('capacity')),
-    resistanceFactor:
-      Math.exp(spreads.resistanceRelative * drawn('resistance')) *
-      (resistanceTemperatureFactor(celsius) / resistanceTemperatureFactor(basis.celsius)),
-    currentFactor: Math.exp(spreads.currentRelative * drawn('current')),
-    curveShiftVolts,
-    spareMeterVolts,
-    spareShiftVolts:
-      curveShiftVolts +
-      spareMeterVolts +
-      (spreads.readingVolts * drawn('spare-scatter')) / Math.sqrt(basis.readVolts.length) +
-      hysteresisOf(spreads, drawn('spare-hysteresis')),
-    lostSoc: basis.lostSoc * Math.exp(spreads.selfDischargeRelative * drawn('self-discharge')),
-  };
-}
+/** Current of a source over what it is set to. */
+export const currentFactor = ({ spreads }: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  Math.exp(spreads.currentRelative * draws[from + PLACE.current]!);
 
-/** Where each group of the spare stands at the clip-on in one sample. */
-export function startSocs({ curve, readVolts }: SampleBasis, { spareShiftVolts, lostSoc }: SpareDrawn): number[] {
+/** What any true voltage is more on the curve, V per group. */
+export const curveShiftVolts = ({ spreads }: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  -spreads.curveVolts * draws[from + PLACE.curve]!;
+
+/** What a rest voltage of the spare's meter is more on the curve, V per group. */
+export const spareShiftVolts = (basis: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  curveShiftVolts(basis, draws, from) +
+  basis.spreads.meterVolts * draws[from + PLACE['spare-meter']]! +
+  (basis.spreads.readingVolts * draws[from + PLACE['spare-scatter']]!) / Math.sqrt(basis.readVolts.length) +
+  hysteresisOf(basis.spreads, draws[from + PLACE['spare-hysteresis']]!);
+
+/** Where each group of the spare stands at the clip-on, into a list. */
+export function startSocs(basis: SampleBasis, draws: ArrayLike<number>, from: number, into: number[]): number[] {
+  const { curve, readVolts, spreads } = basis;
   const ready = compileCurve(curve);
-  const soc: number[] = [];
+  const shift = spareShiftVolts(basis, draws, from);
+  const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * draws[from + PLACE['self-discharge']]!);
   for (let group = 0; group < readVolts.length; group += 1) {
     const volts = readVolts[group]!;
     // Groups read alike stand alike.
     const alike = group > 0 && volts === readVolts[group - 1]!;
-    soc.push(alike ? soc[group - 1]! : socOfCurve(ready, volts + spareShiftVolts) - lostSoc);
+    into[group] = alike ? into[group - 1]! : socOfCurve(ready, volts + shift) - lost;
   }
-  return soc;
+  return into;
 }
 
 /** The module of one set of standard normal draws, in the order of `SAMPLE_AXES`. */
 export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
   const { spreads, curve } = basis;
-  const drawn = spareDrawn(basis, draws);
-  const { curveShiftVolts, spareMeterVolts } = drawn;
-  const targetMeter = basis.sameMeter ? spareMeterVolts : spreads.meterVolts * draws[PLACE['target-meter']]!;
+  const curveShift = curveShiftVolts(basis, draws);
+  const targetMeter = spreads.meterVolts * draws[PLACE[basis.sameMeter ? 'spare-meter' : 'target-meter']]!;
   const targetScatter = draws[PLACE['target-scatter']]!;
   const bySoc = basis.targetSoc ?? null;
   const ownTargetSoc = bySoc === null ? null : bySoc.soc + bySoc.sd * targetScatter;
   const targetShiftVolts =
     ownTargetSoc !== null
       ? voltsAtSoc(curve, ownTargetSoc) - basis.targetVolts
-      : curveShiftVolts +
+      : curveShift +
         targetMeter +
         spreads.targetVolts * targetScatter +
         hysteresisOf(spreads, draws[PLACE['target-hysteresis']]!);
   return {
-    startSoc: startSocs(basis, drawn),
+    startSoc: startSocs(basis, draws, 0, []),
     targetSoc: ownTargetSoc ?? socOf(curve, basis.targetVolts + targetShiftVolts),
-    capacityAh: times(basis.capacityAh, drawn.capacityFactor),
-    longOhm: times(basis.longOhm, drawn.resistanceFactor),
-    currentFactor: drawn.currentFactor,
-    spareShiftVolts: drawn.spareShiftVolts,
+    capacityAh: times(basis.capacityAh, capacityFactor(basis, draws)),
+    longOhm: times(basis.longOhm, resistanceFactor(basis, draws)),
+    currentFactor: currentFactor(basis, draws),
+    spareShiftVolts: spareShiftVolts(basis, draws),
     targetShiftVolts,
-    curveShiftVolts,
+    curveShiftVolts: curveShift,
     chargerDraw: draws[PLACE['charger-meter']]!,
     draws,
   };

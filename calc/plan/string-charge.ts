@@ -1,15 +1,15 @@
 import { compileCurve, PIECE, type CompiledCurve } from '../curve/compiled-curve';
 import type { OcvTable } from '../types';
 
-/** Charge in series groups seen over the ampere-hours at the terminals; groups that behave alike are one. */
+/** Charge in series groups seen over the ampere-hours at the terminals. */
 export interface StringCharge {
   curve: CompiledCurve;
   /** How many there are of each, */
-  counts: number[];
+  counts: readonly number[];
   /** where they stand, */
-  soc: number[];
+  soc: readonly number[];
   /** and how far one ampere-hour at the terminals moves them, signed by the direction. */
-  socPerAmpHour: number[];
+  socPerAmpHour: readonly number[];
   /** Piece of the curve in which each was found last: charge moves little between two looks. */
   pieces: number[];
   /** Where one ampere-hour moves all of them alike; else null. */
@@ -30,13 +30,23 @@ interface Cloud {
   cubes: number;
 }
 
-/** Merges groups with equal state and step, so that a module of twelve like groups costs one. */
+/** Groups that move alike are a cloud; of others those with equal state and step are merged. */
 export function stringCharge(table: OcvTable, soc: readonly number[], socPerAmpHour: readonly number[]): StringCharge {
   const curve = compileCurve(table);
+  const piece = curve.ofSoc.at(soc[0]!);
+  const cloud = cloudOf(soc, socPerAmpHour);
+  if (cloud !== null) {
+    const pieces: number[] = [];
+    const counts: number[] = [];
+    for (let at = 0; at < soc.length; at += 1) {
+      pieces.push(piece);
+      counts.push(1);
+    }
+    return { curve, counts, soc, socPerAmpHour, pieces, cloud, volts: NaN, slope: NaN };
+  }
   const counts: number[] = [];
   const own: number[] = [];
   const steps: number[] = [];
-  const pieces: number[] = [];
   for (let group = 0; group < soc.length; group += 1) {
     const at = soc[group]!;
     const step = socPerAmpHour[group]!;
@@ -47,32 +57,30 @@ export function stringCharge(table: OcvTable, soc: readonly number[], socPerAmpH
       counts.push(1);
       own.push(at);
       steps.push(step);
-      pieces.push(curve.ofSoc.at(at));
     }
   }
-  const cloud = cloudOf(counts, own, steps);
+  const pieces = own.map(() => piece);
   return { curve, counts, soc: own, socPerAmpHour: steps, pieces, cloud, volts: NaN, slope: NaN };
 }
 
-function cloudOf(counts: readonly number[], soc: readonly number[], steps: readonly number[]): Cloud | null {
-  let count = 0;
+function cloudOf(soc: readonly number[], steps: readonly number[]): Cloud | null {
+  const count = soc.length;
   let sum = 0;
   let least = Infinity;
   let most = -Infinity;
-  for (let at = 0; at < soc.length; at += 1) {
+  for (let at = 0; at < count; at += 1) {
     if (steps[at] !== steps[0]) return null;
-    count += counts[at]!;
-    sum += counts[at]! * soc[at]!;
+    sum += soc[at]!;
     least = Math.min(least, soc[at]!);
     most = Math.max(most, soc[at]!);
   }
   const mean = sum / count;
   let squares = 0;
   let cubes = 0;
-  for (let at = 0; at < soc.length; at += 1) {
+  for (let at = 0; at < count; at += 1) {
     const off = soc[at]! - mean;
-    squares += counts[at]! * off * off;
-    cubes += counts[at]! * off * off * off;
+    squares += off * off;
+    cubes += off * off * off;
   }
   return { count, least, most, mean, squares, cubes };
 }
