@@ -12,7 +12,7 @@ export const NOTHING_LEARNED: Reckoning['learned'] = { capacityAh: null, longOhm
 
 /** What the samples of a charge say of its module and leads, before the readings and after. */
 export class Learns {
-  private readonly numbers: Record<keyof Reckoning['learned'], Float64Array | null>;
+  private readonly numbers: Record<keyof Reckoning['learned'], readonly number[] | null>;
   private readonly prior: Record<keyof Reckoning['learned'], { mean: number; variance: number } | null>;
 
   /** @param set not read yet */

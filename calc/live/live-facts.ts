@@ -14,7 +14,7 @@ import { LEADS_AXIS, LIVE_AXES } from './live-draws';
 import { LIVE_SPREADS } from './live-spreads';
 import type { Observation } from './observations';
 
-/** What readings see of the samples, a column each; the charge of each place follows after them. */
+/** What readings see of the samples, a column each, in this order; the charge of each place follows after them. */
 export const FACTS = {
   /** Capacity and resistance over the nominal ones. */
   capacity: 0,
@@ -53,18 +53,15 @@ export interface Residual {
   /** Charge that has gone into it, as a share of the nominal capacity. */
   movedSoc: number;
   /** What one of each fact adds. */
-  slopes: Float64Array;
+  slopes: readonly number[];
 }
 
 /** Of a residual without a rest voltage. */
 export const NO_PLACE = { place: -1, movedSoc: 0 } as const;
 
 /** Slopes of a residual, 0 where nothing is said. */
-export function slopesOf(by: Partial<Record<keyof typeof FACTS, number>>): Float64Array {
-  const slopes = new Float64Array(FACT_COUNT);
-  for (const fact of FACT_NAMES) slopes[FACTS[fact]] = by[fact] ?? 0;
-  return slopes;
-}
+export const slopesOf = (by: Partial<Record<keyof typeof FACTS, number>>): number[] =>
+  FACT_NAMES.map((fact) => by[fact] ?? 0);
 
 /** Ohm of a channel's leads by the facts (leadOhmOf). */
 export function leadSlopes({ leadResistanceOhm, senses }: ChannelParameters): {

@@ -100,7 +100,7 @@ export class ParticleSet {
   }
 
   /** Mean and variance over the samples of a number that is straight in their facts. */
-  moments(slopes: Float64Array): { mean: number; variance: number } {
+  moments(slopes: readonly number[]): { mean: number; variance: number } {
     this.facts.residuals({ read: 0, ...NO_PLACE, slopes }, this.columns, this.values);
     return this.momentsOf(this.values);
   }

@@ -62,8 +62,8 @@ function chainOf(looks: readonly Look[]): Chain[] {
 class Offs {
   /** What each sample has for the shared errors in the end, of all samples kind by kind. */
   readonly memory: Float64Array;
-  /** Of the looks one after the other, `count` each. */
-  readonly off: Float64Array;
+  /** Sum of the squares in each. */
+  readonly squares: Float64Array;
   private readonly residual: Float64Array;
   private readonly other: Float64Array;
 
@@ -73,15 +73,19 @@ class Offs {
     private readonly count: number,
   ) {
     this.memory = new Float64Array(count * MEMORY_COUNT);
-    this.off = new Float64Array(count * chain.length);
+    this.squares = new Float64Array(count);
     this.residual = new Float64Array(count);
     this.other = new Float64Array(count);
   }
 
-  /** @param columns facts of the samples */
-  follow(columns: Float64Array): void {
-    const { facts, chain, count, memory, off, residual, other } = this;
+  /**
+   * @param columns facts of the samples
+   * @param into takes the looks one after the other, `count` each
+   */
+  follow(columns: Float64Array, into?: Float64Array): void {
+    const { facts, chain, count, memory, squares, residual, other } = this;
     memory.fill(0);
+    squares.fill(0);
     for (let row = 0; row < chain.length; row += 1) {
       const { look, column, kept, gain, perSd } = chain[row]!;
       const { sharedSd, otherResidual } = look;
@@ -96,7 +100,9 @@ class Offs {
           if (Math.abs(second) < Math.abs(own)) own = second;
         }
         memory[place] = prior + gain * own;
-        off[row * count + at] = own * perSd;
+        const off = own * perSd;
+        squares[at] = squares[at]! + off * off;
+        if (into) into[row * count + at] = off;
       }
     }
   }
@@ -141,8 +147,7 @@ export function posteriorOf(
     const columns = facts.columnsOf(draws);
     const offs = new Offs(facts, chain, count);
     offs.follow(columns);
-    for (let from = 0; from < offs.off.length; from += count)
-      for (let at = 0; at < count; at += 1) logs[at] = logs[at]! - 0.5 * offs.off[from + at]! ** 2;
+    for (let at = 0; at < count; at += 1) logs[at] = logs[at]! - 0.5 * offs.squares[at]!;
     const weights = weightsOf(logs, 1);
     const worth = effectiveSampleSize(weights);
     if (best === null || worth > best.worth) best = { draws, columns, weights, memory: offs.memory, worth };
@@ -182,6 +187,7 @@ function fit(facts: LiveFacts, chain: readonly Chain[], axes: readonly number[])
   const looks = chain.length;
   const centre = new Float64Array(size);
   const base = new Float64Array(looks);
+  const moved = new Float64Array(looks * size);
   const slopes = new Float64Array(looks * size);
   const normal = new Float64Array(size * size);
   const one = new Offs(facts, chain, 1);
@@ -189,18 +195,17 @@ function fit(facts: LiveFacts, chain: readonly Chain[], axes: readonly number[])
   const worthOf = (x: Float64Array): number => {
     const own = new Float64Array(LIVE_AXES);
     for (let k = 0; k < size; k += 1) own[axes[k]!] = x[k]!;
-    one.follow(facts.columnsOf(own));
-    return squares(one.off) + squares(x);
+    one.follow(facts.columnsOf(own), base);
+    return one.squares[0]! + x.reduce((sum, value) => sum + value * value, 0);
   };
   for (let step = 0; step < MOST_STEPS; step += 1) {
     const worth = worthOf(centre);
-    base.set(one.off);
     const near = new Float64Array(size * LIVE_AXES);
     for (let k = 0; k < size; k += 1)
       for (let j = 0; j < size; j += 1) near[k * LIVE_AXES + axes[j]!] = centre[j]! + (j === k ? NUDGE : 0);
-    nudged.follow(facts.columnsOf(near));
+    nudged.follow(facts.columnsOf(near), moved);
     for (let row = 0; row < looks; row += 1)
-      for (let k = 0; k < size; k += 1) slopes[row * size + k] = (nudged.off[row * size + k]! - base[row]!) / NUDGE;
+      for (let k = 0; k < size; k += 1) slopes[row * size + k] = (moved[row * size + k]! - base[row]!) / NUDGE;
     normal.fill(0);
     const right = new Float64Array(size);
     for (let k = 0; k < size; k += 1) {
@@ -240,9 +245,3 @@ function about(rows: Float64Array, weights: Float64Array, size: number) {
 }
 
 const scaled = (matrix: Float64Array, by: number): Float64Array => matrix.map((one) => one * by);
-
-const squares = (values: Float64Array): number => {
-  let sum = 0;
-  for (let at = 0; at < values.length; at += 1) sum += values[at]! * values[at]!;
-  return sum;
-};
