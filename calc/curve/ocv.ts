@@ -66,7 +66,7 @@ export function curveSoc(curve: CompiledCurve, volts: number): number {
 /** An error this far below the last digit of a state of charge. */
 const NO_MORE = 1e-17;
 
-/** Newton kept inside a shrinking bracket; the piece rises, so there is one root in (0, width). */
+/** Halley's method kept inside a shrinking bracket; the piece rises, so there is one root in (0, width). */
 function solvePiece({ knots, pieces, inverses }: CompiledCurve, k: number, rise: number): number {
   const p = PIECE * k;
   const i = INVERSE * k;
@@ -82,13 +82,14 @@ function solvePiece({ knots, pieces, inverses }: CompiledCurve, k: number, rise:
     if (miss > 0) high = x;
     else low = x;
     const slope = c1 + x * (2 * c2 + x * 3 * c3);
-    let next = x - miss / slope;
+    const bend = c2 + 3 * c3 * x;
+    let next = x - (miss * slope) / (slope * slope - miss * bend);
     const inside = next > low && next < high;
     if (!inside) next = (low + high) / 2;
-    const step = next - x;
-    if (Math.abs(step) <= 1e-16) return next;
-    // Newton's next error is the step's square times half the ratio of the second slope to the first.
-    if (inside && Math.abs(c2 + 3 * c3 * x) * step * step <= NO_MORE * slope) return next;
+    const step = Math.abs(next - x);
+    if (step <= 1e-16) return next;
+    // The next error is the cube of the step times (U''/2U')² − U'''/6U'.
+    if (inside && (bend * bend + Math.abs(c3) * slope) * step * step * step <= NO_MORE * slope * slope) return next;
     x = next;
   }
   return x;
