@@ -27,7 +27,7 @@ export function optionTotals(model: PlanModel, draft: Draft) {
   };
   clockInput.restS = Math.max(clockInput.restS, settleAfterEnd(steps, layOut(clockInput)));
   const clock = layOut(clockInput);
-  const reckoned = model.samples.map((sample) => steps.map((step) => step.secondsIn(sample)));
+  const reckoned = model.samples().map((sample) => steps.map((step) => step.secondsIn(sample)));
   const factor = timeFactorOf(input, steps);
   const sampled = factor === null ? reckoned : withTimeFactor(reckoned, factor);
   const ready = sampled.map((seconds) => layOut({ ...clockInput, seconds }).readyS);
@@ -49,7 +49,7 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
   const { steps } = draft;
   const totals = optionTotals(model, draft);
   const { clockInput, clock, factor, sampled, totalS, endGroupVolts, endSpreadVolts, withinTolerance } = totals;
-  const doubt = dominantDoubt(model.samples, totals.ready);
+  const doubt = dominantDoubt(model.samples(), totals.ready);
   const likely = likelyInput(clockInput, clock, totalS.p50);
 
   const latestStartS = input.readyByS === null ? null : input.readyByS - (totalS.p90 - clock.queueS);
@@ -100,7 +100,7 @@ export const channelIdsOf = ({ steps }: Draft): string[] => [
 
 function knownEndOf(model: PlanModel, { knownEnd, endSocIn }: Draft): Pick<PlanOption, 'knownEnd' | 'endSoc'> {
   if (knownEnd === undefined || endSocIn === undefined) return {};
-  const ends = model.samples.map(endSocIn);
+  const ends = model.samples().map(endSocIn);
   return {
     knownEnd,
     endSoc: { p10: quantile(ends, 0.1), p50: quantile(ends, 0.5), p90: quantile(ends, 0.9) },

@@ -3,7 +3,7 @@ import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading
 import type { RepairDto } from '@/shared/contract/repair';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
-import { ampHours, millivolts, millivoltsWithBand, wholeRange } from '../format/quantities';
+import { ampHours, millivolts, millivoltsWithBand, bandBeside } from '../format/quantities';
 import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
@@ -103,8 +103,8 @@ export function ReadingsPart({
   );
 }
 
-/** '1 balance charge (1–2)' */
+/** '1 balance charge (1–2)', '1 balance charge' */
 export function balanceWords({ p10, p50, p90 }: NonNullable<NonNullable<RepairDto['forecast']>['charges']>): string {
   const likely = Math.round(p50);
-  return `${likely} balance ${likely === 1 ? 'charge' : 'charges'} (${wholeRange(p10, p90)})`;
+  return `${likely} balance ${likely === 1 ? 'charge' : 'charges'}${bandBeside(p50, p10, p90)}`;
 }
