@@ -4,7 +4,7 @@ import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading
 import type { BalanceForecastDto, RepairDto } from '@/shared/contract/repair';
 import { NBSP, type LocaleMarks } from '../format/marks';
 import { shortest } from '../format/number';
-import { millivolts, wholeRange } from '../format/quantities';
+import { bandBeside, millivolts, wholeRange } from '../format/quantities';
 
 /** Readings that count, the first first. */
 export const spreadLog = (readings: readonly PackReadingDto[]): PackReadingDto[] =>
@@ -40,7 +40,7 @@ export function forecastWords(forecast: BalanceForecastDto): { converges: boolea
   if (forecast.doesNotConverge) return { converges: false, text: notConverging[forecast.doesNotConverge] };
   if (!forecast.charges) return { converges: true, text: 'not known yet' };
   const { p10, p50, p90 } = forecast.charges;
-  return { converges: true, text: p10 === p90 ? String(p50) : `${p50} (${wholeRange(p10, p90)})` };
+  return { converges: true, text: `${Math.round(p50)}${bandBeside(p50, p10, p90)}` };
 }
 
 /** Where the forecast comes from, and what one balance charge is taken as; null: nothing is forecast. */

@@ -3,7 +3,7 @@ import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading
 import type { RepairDto } from '@/shared/contract/repair';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
-import { ampHours, millivolts, millivoltsWithBand, bandBeside } from '../format/quantities';
+import { ampHours, bandBeside, millivolts, millivoltsWithBand } from '../format/quantities';
 import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';

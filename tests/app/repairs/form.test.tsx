@@ -134,7 +134,14 @@ describe('the map of groups to modules', () => {
   ])('typed as %j is %j', (text, positions) => expect(positionsTyped(text)).toEqual(positions));
 
   it('says how many of the 4 groups have a position', () =>
-    expect(mapHint({ moduleTypeId: '', groupCount: '4', groupsPerModule: '2', positionOfGroup: '1, 1, 2' })).toBe(
-      '3 of 4 groups have a position.',
-    ));
+    expect(
+      mapHint({
+        moduleTypeId: '',
+        groupCount: '4',
+        groupsPerModule: '2',
+        positionOfGroup: '1, 1, 2',
+        bleedAmps: '',
+        aimMillivolts: '',
+      }),
+    ).toBe('3 of 4 groups have a position.'));
 });
