@@ -52,6 +52,9 @@ function logOf(readings: readonly PackReading[]): PackReading[] {
 const bleedOf = (typed: number | null) =>
   typed === null ? USUAL_BLEED_AMPS : { low: typed * TYPED_BLEED.low, likely: typed, high: typed * TYPED_BLEED.high };
 
+/** Spread that a reading shows, mV: of level groups too the meter's scatter is left. */
+const asRead = (volts: number): number => inMillivolts(Math.max(volts, TWO_METERS_VOLTS));
+
 /** Null before the first reading after the fit, or where no curve is known. */
 export function forecastOf(file: RepairFile, facts: RepairFacts): BalanceForecastDto | null {
   const { type, repair } = file;
@@ -73,9 +76,9 @@ export function forecastOf(file: RepairFile, facts: RepairFacts): BalanceForecas
     charges: found.charges,
     hoursPerCharge: HOURS_PER_CHARGE,
     expectedMillivolts: found.expectedVolts.map(({ p10, p50, p90 }) => ({
-      p10: inMillivolts(p10),
-      p50: inMillivolts(p50),
-      p90: inMillivolts(p90),
+      p10: asRead(p10),
+      p50: asRead(p50),
+      p90: asRead(p90),
     })),
     from: found.charges === null ? null : found.bySource,
     doesNotConverge: found.doesNotConverge,

@@ -34,6 +34,8 @@ describe('what a pack balances with', () => {
       const { charges, expectedMillivolts } = forecast!;
       expect(expectedMillivolts).toHaveLength(charges!.p90);
       expect(expectedMillivolts[charges!.p50 - 1]!.p50).toBeLessThanOrEqual(10.5);
+      // A meter never shows level groups as 0 mV apart.
+      expect(Math.min(...expectedMillivolts.map(({ p10 }) => p10))).toBeGreaterThan(0);
       expect(expectedMillivolts.map(({ p50 }) => p50)).toEqual(
         expectedMillivolts.map(({ p50 }) => p50).sort((one, other) => other - one),
       );
