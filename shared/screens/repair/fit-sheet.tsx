@@ -7,6 +7,7 @@ import { useFormats } from '@/shared/ui/format/formats';
 import { tolerance, volts } from '@/shared/ui/format/quantities';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Field } from '@/shared/ui/primitives/field';
+import { SheetFields } from '@/shared/ui/primitives/sheet-fields';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { problemOfAct } from './act-problem';
 
@@ -53,19 +54,21 @@ export function FitSheet({
       }
       onClose={onClose}
     >
-      <Field
-        label="Note"
-        value={draft.value}
-        onChangeText={(text) => draft.set(text)}
-        multiline
-        lines={2}
-        maxLength={300}
-      />
-      {problem ? (
-        <Txt tone="alarm" bold role="alert">
-          {problem}
-        </Txt>
-      ) : null}
+      <SheetFields under>
+        <Field
+          label="Note"
+          value={draft.value}
+          onChangeText={(text) => draft.set(text)}
+          multiline
+          lines={2}
+          maxLength={300}
+        />
+        {problem ? (
+          <Txt tone="alarm" bold role="alert">
+            {problem}
+          </Txt>
+        ) : null}
+      </SheetFields>
     </ConfirmSheet>
   );
 }
