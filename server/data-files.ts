@@ -9,5 +9,7 @@ export function prepareDataFolder(dataDir: string): void {
 
 /** Where the database lies within the data folder. */
 export const databaseFile = (dataDir: string): string => path.join(dataDir, 'bidewell.sqlite');
+/** Where the photos of repairs lie. */
+export const photoFolder = (dataDir: string): string => path.join(dataDir, 'photos');
 /** Where copies of it go unless somebody says otherwise. */
 export const backupFolder = (dataDir: string): string => path.join(dataDir, 'backups');

@@ -2,6 +2,7 @@ import http from 'node:http';
 import https from 'node:https';
 import type { AddressInfo } from 'node:net';
 import type { Logger } from 'pino';
+import type { DataSource } from 'typeorm';
 import { systemClock, type Clock } from './clock';
 import { isEveryAddress, type Config } from './config';
 import { createApp } from './create-app';
@@ -17,6 +18,7 @@ import { migrate } from './migrate';
 import { makeLimits } from './services/limits';
 import { makePasswords } from './services/passwords';
 import { loadSecrets } from './services/secrets';
+import { sweepPhotos } from './sweep-photos';
 
 /** Requests under way get this long to end when the server stops, ms. */
 const drainMs = 10_000;
@@ -56,6 +58,12 @@ const quietly = (work: Promise<unknown>, log: Logger, what: string): Promise<voi
     (error: unknown) => log.error({ err: error }, what),
   );
 
+async function sweptPhotos(dataSource: DataSource, config: Config, now: number, log: Logger): Promise<void> {
+  const { removed, strange } = await sweepPhotos(dataSource, config.dataDir, now);
+  if (removed.length > 0) log.info({ files: removed }, 'photos that nothing names were removed');
+  if (strange) log.warn('the database names none of the photos in the data folder: they were left alone');
+}
+
 /**
  * Starts everything, in an order in which nothing is lost: database and its migrations, sockets, then what fell due
  * while the server was off, then the port, and ready only at the end.
@@ -79,6 +87,7 @@ export async function startServer(config: Config, log: Logger, clock: Clock = sy
     const server = config.tls ? https.createServer(config.tls, app) : http.createServer(app);
     hub.attach(server);
     if (config.metroPort !== null) proxyMetroUpgrades(server, config.metroPort);
+    await quietly(sweptPhotos(dataSource, config, clock.now(), log), log, 'the photos were not swept');
     await sleeper.start();
     const port = await listenOn(server, config);
     lifecycle.ready = true;

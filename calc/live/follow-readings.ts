@@ -2,6 +2,8 @@ import type { OddSeen, Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
 import { twoSidedTail } from '../statistics/normal-cdf';
 import { Learns, NOTHING_LEARNED } from './learned';
+import { readAxes } from './live-draws';
+import { LiveFacts, placesOf } from './live-facts';
 import { JUDGES, LIVE_SPREADS, PARTICLES } from './live-spreads';
 import type { LivePast } from './live-rounds';
 import { isFull, Looks, type Since } from './looks';
@@ -42,10 +44,11 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     learned: NOTHING_LEARNED,
     learnedUnderCurrent: NOTHING_LEARNED,
   };
-  if (kept.length === 0 || model.samples.length === 1) return followed;
-  const set = new ParticleSet(model, JUDGES, seed);
+  if (kept.length === 0 || model.sampleCount === 1) return followed;
   const observations = observationsOf(model, past, kept);
-  const looks = new Looks(model, rippleOf(observations));
+  const facts = new LiveFacts(model, placesOf(model, observations));
+  const set = new ParticleSet(facts, readAxes(model), JUDGES, seed);
+  const looks = new Looks(model, facts, rippleOf(observations));
   const learns = new Learns(model, past, set);
   const runs = new OddRuns();
   let underCurrent: Reckoning['learned'] | null = null;
@@ -89,7 +92,7 @@ export function followReadings(model: PlanModel, past: LivePast, kept: readonly 
     }
     if (takeIn(set, looks, at, since, terminal)) voltsSoc = soc;
   }
-  set.settle(Math.max(PARTICLES, model.samples.length));
+  set.settle(Math.max(PARTICLES, model.sampleCount));
   return {
     ...followed,
     set: set.read ? set : null,

@@ -1,4 +1,5 @@
 import type { PlanModel } from '../plan/plan-model';
+import { sampleOf } from '../plan/samples';
 import { splitLongResistance } from '../resistance/long-resistance';
 import { LIVE_SPREADS } from './live-spreads';
 import { MODEL_AXIS } from './live-draws';
@@ -21,6 +22,16 @@ export function learnedModel(
   const resistance = learned.longOhm ? learned.longOhm.mean / mean(model.nominal.longOhm) : 1;
   // Between now and the end of the current the model's error forgets itself.
   const kept = lookedAtSoc === null ? 0 : Math.exp(-Math.abs(endSoc - lookedAtSoc) / LIVE_SPREADS.modelCorrelationSoc);
+  const samples = Array.from(set.weights, (_, at) => {
+    const sample = sampleOf(model.basis, set.drawsOf(at));
+    const shared = set.sharedOf('volts', at);
+    const variance = kept ** 2 * (shared.variance ?? 0) + 1 - kept ** 2;
+    const error = kept * shared.mean + Math.sqrt(variance) * sample.draws[MODEL_AXIS]!;
+    // The error under current is one of the resistance, as it is then.
+    const factor = Math.max(LEAST_FACTOR, 1 + LIVE_SPREADS.modelRelative * error);
+    for (let group = 0; group < sample.longOhm.length; group += 1) sample.longOhm[group]! *= factor;
+    return sample;
+  });
   return {
     ...plain,
     groups: model.groups.map((group) => ({
@@ -33,14 +44,8 @@ export function learnedModel(
       capacityAh: model.nominal.capacityAh.map((ampHours) => ampHours * capacity),
       longOhm: model.nominal.longOhm.map((ohm) => ohm * resistance),
     },
-    samples: set.samples.map((sample, at) => {
-      const shared = set.sharedOf('volts', at);
-      const variance = kept ** 2 * (shared.variance ?? 0) + 1 - kept ** 2;
-      const error = kept * shared.mean + Math.sqrt(variance) * sample.draws[MODEL_AXIS]!;
-      // The error under current is one of the resistance, as it is then.
-      const factor = Math.max(LEAST_FACTOR, 1 + LIVE_SPREADS.modelRelative * error);
-      return { ...sample, longOhm: sample.longOhm.map((ohm) => ohm * factor) };
-    }),
+    samples: () => samples,
+    sampleCount: samples.length,
     weights: set.weights,
   };
 }

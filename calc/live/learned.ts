@@ -1,7 +1,6 @@
 import type { Learned, Reckoning } from '../live-types';
 import type { PlanModel } from '../plan/plan-model';
-import type { Sample } from '../plan/samples';
-import { leadOhmOf } from './live-draws';
+import { leadSlopes, slopesOf } from './live-facts';
 import type { LivePast } from './live-rounds';
 import type { ParticleSet } from './particle-set';
 import { mean } from '../statistics/mean';
@@ -13,7 +12,7 @@ export const NOTHING_LEARNED: Reckoning['learned'] = { capacityAh: null, longOhm
 
 /** What the samples of a charge say of its module and leads, before the readings and after. */
 export class Learns {
-  private readonly numbers: Record<keyof Reckoning['learned'], ((sample: Sample) => number) | null>;
+  private readonly numbers: Record<keyof Reckoning['learned'], readonly number[] | null>;
   private readonly prior: Record<keyof Reckoning['learned'], { mean: number; variance: number } | null>;
 
   /** @param set not read yet */
@@ -26,9 +25,9 @@ export class Learns {
     const step = round?.lanes.length === 1 ? round.lanes[0]!.step : null;
     const channel = model.input.channels.find((one) => one.channelId === step?.channelIds[0]);
     this.numbers = {
-      capacityAh: ({ capacityAh }) => mean(capacityAh),
-      longOhm: ({ longOhm }) => mean(longOhm),
-      leadOhm: channel ? (sample) => leadOhmOf(channel, sample) : null,
+      capacityAh: slopesOf({ capacity: mean(model.basis.capacityAh) }),
+      longOhm: slopesOf({ resistance: mean(model.nominal.longOhm) }),
+      leadOhm: channel ? slopesOf(leadSlopes(channel)) : null,
     };
     this.prior = {
       capacityAh: this.moments('capacityAh'),
@@ -39,7 +38,7 @@ export class Learns {
 
   private moments(name: keyof Reckoning['learned']): { mean: number; variance: number } | null {
     const of = this.numbers[name];
-    return of && this.set.moments((sample) => of(sample));
+    return of && this.set.moments(of);
   }
 
   now(): Reckoning['learned'] {

@@ -23,10 +23,12 @@ export function liveDoubt(samples: readonly Sample[], weights: Float64Array, sec
     for (let row = 0; row < size; row += 1) {
       const off = weights[at]! * (draws[row]! - means[row]!);
       cross[row]! += off * (seconds[at]! - meanS);
-      for (let column = 0; column < size; column += 1)
+      for (let column = 0; column <= row; column += 1)
         cov[row * size + column]! += off * (draws[column]! - means[column]!);
     }
   });
+  for (let row = 0; row < size; row += 1)
+    for (let column = row + 1; column < size; column += 1) cov[row * size + column] = cov[column * size + row]!;
   const slopes = solve(cov, cross, size);
   const shares = new Map<Doubt, number>();
   for (const doubt of new Set(Object.values(DOUBT_OF_AXIS))) {

@@ -1,6 +1,6 @@
 import type { ChannelParameters } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
-import { SAMPLE_AXES, sampleOf, type Sample } from '../plan/samples';
+import { SAMPLE_AXES, type Sample } from '../plan/samples';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { latinHypercube } from '../statistics/latin-hypercube';
 import { LIVE_SPREADS } from './live-spreads';
@@ -8,24 +8,25 @@ import { LIVE_SPREADS } from './live-spreads';
 /** The axis that a running charge adds after those of the plan: what its model is off under current. */
 export const MODEL_AXIS = SAMPLE_AXES.length;
 export const LIVE_AXES = SAMPLE_AXES.length + 1;
-const LEADS_AXIS = SAMPLE_AXES.indexOf('leads');
+export const LEADS_AXIS = SAMPLE_AXES.indexOf('leads');
 
 /** Sets that were drawn last: each reading of a charge starts from the same one. */
-const drawn = new Map<string, number[][]>();
+const drawn = new Map<string, Float64Array>();
 const MOST_DRAWN = 16;
 
-/** The plan's Latin hypercube with the axes of a running charge, as standard normal draws. Not to be changed. */
-export function liveDraws(count: number, seed: number): number[][] {
+/**
+ * The plan's Latin hypercube with the axes of a running charge, as standard normal draws, `LIVE_AXES` a sample. Not to be
+ * changed.
+ */
+export function liveDraws(count: number, seed: number): Float64Array {
   const key = `${count}/${seed}`;
   const known = drawn.get(key);
   if (known) return known;
-  const draws = latinHypercube(count, LIVE_AXES, seed).map((point) => point.map(inverseNormal));
+  const draws = Float64Array.from(latinHypercube(count, LIVE_AXES, seed).flat(), inverseNormal);
   if (drawn.size >= MOST_DRAWN) drawn.delete(drawn.keys().next().value!);
   drawn.set(key, draws);
   return draws;
 }
-
-export const liveSample = (model: PlanModel, draws: number[]): Sample => sampleOf(model.basis, draws);
 
 /** Leads between a charger's own terminals and the module in one sample, ohm; as entered in a sample of the plan alone. */
 export function leadOhmOf(channel: ChannelParameters, sample: Sample): number {

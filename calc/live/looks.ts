@@ -1,20 +1,14 @@
-import { compileCurve, PIECE, pieceAt } from '../curve/compiled-curve';
 import { slopeAtSoc } from '../curve/ocv';
 import type { PlanModel } from '../plan/plan-model';
 import { chargerSd } from '../plan/sample-run';
-import { SAMPLE_AXES, type Sample } from '../plan/samples';
-import { leadOhmOf } from './live-draws';
+import { leadSlopes, NO_PLACE, slopesOf, wholePlace, type LiveFacts, type Residual } from './live-facts';
 import { LIVE_SPREADS } from './live-spreads';
 import type { Circuit, Observation } from './observations';
 import type { Look } from './particle-set';
 
-const SPARE_METER = SAMPLE_AXES.indexOf('spare-meter');
-const TEMPERATURE = SAMPLE_AXES.indexOf('temperature');
-
 /** A look at the voltage between the clips. */
 export interface TerminalLook extends Look {
   volts: number;
-  expected: (sample: Sample) => number;
 }
 
 /** What changes from one look to the next. */
@@ -49,47 +43,29 @@ export function isFull(circuit: Circuit, amps: number): boolean {
   return full === null || amps >= FULL_SHARE * full - (circuit.channel.displayStepAmps ?? 0);
 }
 
-/** The mean rest voltage of the groups of a circuit in one sample, V, as its true voltmeter would have it. */
-function restVoltsIn(
-  model: PlanModel,
-): (observation: Observation, groups: number[], shares: number[]) => (sample: Sample) => number {
-  const curve = compileCurve(model.curve);
-  const { knots, pieces } = curve;
-  return ({ movedAh }, groups, shares) => {
-    const inside = groups.map((group) => (movedAh[group]! > 0 ? movedAh[group]! * model.efficiency : movedAh[group]!));
-    return (sample) => {
-      let soc = 0;
-      for (let at = 0; at < groups.length; at += 1)
-        soc += shares[at]! * (sample.startSoc[groups[at]!]! + inside[at]! / sample.capacityAh[groups[at]!]!);
-      const p = PIECE * pieceAt(knots, soc);
-      const x = soc - pieces[p]!;
-      return pieces[p + 1]! + x * (pieces[p + 2]! + x * (pieces[p + 3]! + x * pieces[p + 4]!)) - sample.curveShiftVolts;
-    };
-  };
-}
-
 /** The looks that one reading gives, as the samples see them. */
 export class Looks {
-  private readonly rest: ReturnType<typeof restVoltsIn>;
-  private readonly nominalOhm: number;
-
   /** @param ripple variance of the current between two looks, as a share of it, by reading */
   constructor(
     private readonly model: PlanModel,
+    private readonly facts: LiveFacts,
     private readonly ripple: ReadonlyMap<Observation, number>,
-  ) {
-    this.rest = restVoltsIn(model);
-    this.nominalOhm = model.nominal.longOhm[0]!;
-  }
+  ) {}
 
-  /** Mean volts of a group at the module under a current. */
-  private moduleVolts(observation: Observation, circuit: Circuit, amps: number): (sample: Sample) => number {
-    const { groups, shares, lane } = circuit;
-    const rest = this.rest(observation, groups, shares);
+  /** What was read less the mean volts of a group at the module under a current. */
+  private lessModule(
+    read: number,
+    observation: Observation,
+    circuit: Circuit,
+    slopes: Parameters<typeof slopesOf>[0],
+  ): Residual {
+    const { groups, shares, lane, knot, ohmicOhm } = circuit;
     const over = groups.reduce((sum, group, at) => sum + shares[at]! * observation.over[group]!, 0);
-    const inner = over + lane.sign * amps * circuit.ohmicOhm;
-    const fixed = circuit.unevenVolts + lane.sign * amps * circuit.linkOhm;
-    return (sample) => rest(sample) + fixed + inner * (sample.longOhm[0]! / this.nominalOhm);
+    return {
+      read: read - (circuit.unevenVolts + lane.sign * knot.amps * circuit.linkOhm),
+      ...this.facts.at(circuit, observation.movedAh),
+      slopes: slopesOf({ curveVolts: 1, resistance: -(over + lane.sign * knot.amps * ohmicOhm), ...slopes }),
+    };
   }
 
   /** What the model may be off by the over-voltage of this current, V a group: all of it may jump with the current. */
@@ -121,19 +97,14 @@ export class Looks {
       kept.reading.terminalVolts === null && kept.amps !== null && !knot.noCurrent && !isFull(circuit, kept.amps);
     const volts = kept.reading.terminalVolts ?? (held ? lane.step.setVolts : null);
     if (volts === null) return null;
-    const at = this.moduleVolts(observation, circuit, amps);
     const byHand = !held && kept.reading.takenAt === 'module' && kept.reading.meterId != null;
     const spare = byHand && kept.reading.meterId === model.input.spare.meterId;
-    const meterSd = chargerSd(model, channel, count);
-    const meter = (sample: Sample): number =>
-      byHand
-        ? spare
-          ? (model.spreads.meterVolts * sample.draws[SPARE_METER]!) / count
-          : 0
-        : (meterSd * sample.chargerDraw) / count;
-    const leads = (sample: Sample): number => (lane.sign * amps * leadOhmOf(channel, sample)) / count;
-    const atModule = (sample: Sample): number => at(sample) - meter(sample);
-    const atSupply = (sample: Sample): number => at(sample) + leads(sample) - meter(sample);
+    const meter = byHand
+      ? { spareMeter: spare ? model.spreads.meterVolts / count : 0 }
+      : { chargerMeter: chargerSd(model, channel, count) / count };
+    const perOhm = (-lane.sign * amps) / count;
+    const leads = leadSlopes(channel);
+    const throughLeads = { leads: perOhm * leads.leads, unknownLeadOhm: perOhm * leads.unknownLeadOhm };
     const place = held
       ? channel.senses === 'module'
         ? 'module'
@@ -146,17 +117,17 @@ export class Looks {
     const unknownMeter = byHand && !spare ? model.spreads.meterVolts / count : 0;
     // Volts without amps stand on the amps that are due.
     const guessed = kept.amps === null ? model.spreads.currentRelative * amps * ohm : 0;
-    const one = (expected: (sample: Sample) => number) => (sample: Sample) => y - expected(sample);
+    const atModule = (): Residual => this.lessModule(y, observation, circuit, meter);
+    const atSupply = (): Residual => this.lessModule(y, observation, circuit, { ...meter, ...throughLeads });
     return {
       memory: 'volts',
-      residual: one(place === 'module' ? atModule : atSupply),
-      ...(place === null && amps > 0 ? { otherResidual: one(atModule) } : {}),
+      residual: place === 'module' ? atModule() : atSupply(),
+      ...(place === null && amps > 0 ? { otherResidual: atModule() } : {}),
       sharedSd: this.modelSd(observation, circuit),
       kept: since.keptVolts,
       keptSmooth: since.smoothVolts,
       ownVariance: ammeter ** 2 + digit ** 2 + unknownMeter ** 2 + guessed ** 2,
       volts,
-      expected: (sample) => count * (place === 'module' ? atModule : atSupply)(sample),
     };
   }
 
@@ -166,30 +137,30 @@ export class Looks {
     const volts = kept.reading.groupVolts;
     const { model } = this;
     if (volts === null || volts.length !== model.groups.length || volts.length === 0) return null;
-    const all = volts.map((_, group) => group);
     const whole = circuit !== null && circuit.groups.length === volts.length && circuit.lane.step.way === 'terminals';
     if (!whole && !atRest) return null;
     const y = volts.reduce((sum, one) => sum + one, 0) / volts.length;
     const known = kept.reading.meterId != null && kept.reading.meterId === model.input.spare.meterId;
-    const meter = (sample: Sample): number => (known ? model.spreads.meterVolts * sample.draws[SPARE_METER]! : 0);
+    const spareMeter = known ? model.spreads.meterVolts : 0;
     const ownVariance = model.spreads.readingVolts ** 2 / volts.length + (known ? 0 : model.spreads.meterVolts ** 2);
     if (whole) {
-      const at = this.moduleVolts(observation, { ...circuit, linkOhm: 0 }, circuit.knot.amps);
       return {
         memory: 'volts',
-        residual: (sample) => y - at(sample) + meter(sample),
+        residual: this.lessModule(y, observation, { ...circuit, linkOhm: 0 }, { spareMeter }),
         sharedSd: this.modelSd(observation, circuit),
         kept: since.keptVolts,
         ownVariance,
       };
     }
-    const shares = all.map(() => 1 / volts.length);
-    const rest = this.rest(observation, all, shares);
     const over = observation.over.reduce((sum, one) => sum + one, 0) / volts.length;
     const wide = LIVE_SPREADS.restOverRelative * Math.abs(over);
     return {
       memory: 'rest',
-      residual: (sample) => y - rest(sample) - over * (sample.longOhm[0]! / this.nominalOhm) + meter(sample),
+      residual: {
+        read: y,
+        ...this.facts.at(wholePlace(model), observation.movedAh),
+        slopes: slopesOf({ curveVolts: 1, resistance: -over, spareMeter }),
+      },
       sharedSd: Math.hypot(wide, LIVE_SPREADS.restVolts),
       kept: 1,
       ownVariance,
@@ -205,7 +176,7 @@ export class Looks {
     const digitAmps = (circuit.channel.displayStepAmps ?? 0) / Math.sqrt(12);
     return {
       memory: 'amps',
-      residual: (sample) => kept.amps! / set - sample.currentFactor,
+      residual: { read: kept.amps / set, ...NO_PLACE, slopes: slopesOf({ current: -1 }) },
       sharedSd: LIVE_SPREADS.ammeterRelative,
       kept: 1,
       ownVariance: (LIVE_SPREADS.ammeterAmps / set) ** 2 + (digitAmps / set) ** 2 + (this.ripple.get(observation) ?? 0),
@@ -219,8 +190,11 @@ export class Looks {
     const { basis, spreads } = this.model;
     return {
       memory: 'celsius',
-      residual: (sample) =>
-        celsius - ownHeatKelvin - basis.celsius - spreads.temperatureCelsius * sample.draws[TEMPERATURE]!,
+      residual: {
+        read: celsius - ownHeatKelvin - basis.celsius,
+        ...NO_PLACE,
+        slopes: slopesOf({ temperature: -spreads.temperatureCelsius }),
+      },
       sharedSd: LIVE_SPREADS.celsiusDrift,
       kept: since.keptCelsius,
       ownVariance: LIVE_SPREADS.celsius ** 2,

@@ -19,13 +19,14 @@ export const stateAtStart = (model: PlanModel): ModuleState => ({
 
 /** Without current until `toS`: dv1/dt = −v1/τ. */
 export function rested(model: PlanModel, state: ModuleState, toS: number, only?: readonly number[]): ModuleState {
-  const seconds = Math.max(0, toS - state.s);
+  const seconds = toS - state.s;
+  if (!(seconds > 0)) return state;
   const over = state.over.map((volts, group) =>
     only === undefined || only.includes(group)
       ? volts * Math.exp(-seconds / model.groups[group]!.polarisationTimeConstantS)
       : volts,
   );
-  return { s: Math.max(state.s, toS), soc: state.soc, over };
+  return { s: toS, soc: state.soc, over };
 }
 
 /** Rest voltage of each group, V. */

@@ -1,4 +1,5 @@
-import { voltsAtSoc } from '../curve/ocv';
+import { compileCurve } from '../curve/compiled-curve';
+import { curveVolts } from '../curve/ocv';
 import type { ChannelParameters } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
 import type { Knot } from './lane-past';
@@ -57,6 +58,7 @@ export function observationsOf(model: PlanModel, past: LivePast, kept: readonly 
     if (round.lanes.length !== 1) continue;
     const lane = round.lanes[0]!;
     const channel = model.input.channels.find((one) => one.channelId === lane.step.channelIds[0]);
+    const circuitOf = channel && circuitsOf(model, lane, channel);
     for (const stretch of round.stretches.slice(0, 1))
       warmed({ s: stretch.fromS, amps: round.pasts[0]!.knots[0]?.amps ?? 0 });
     for (const knot of round.pasts[0]!.knots) {
@@ -65,7 +67,7 @@ export function observationsOf(model: PlanModel, past: LivePast, kept: readonly 
         kept: reading,
         movedAh: movedAfter(model, round.movedBeforeAh, lane, knot.deliveredAh),
         over: knot.state.over,
-        circuit: channel && !knot.over && !knot.paused ? circuitOf(model, lane, channel, knot) : null,
+        circuit: circuitOf && !knot.over && !knot.paused ? circuitOf(knot) : null,
         atRest: knot.over,
         ownHeatKelvin: warmed({ s: reading.s, amps: knot.amps }),
       });
@@ -104,34 +106,40 @@ const restStart = (round: LiveRound) => {
   return { ...state, over };
 };
 
-function circuitOf(model: PlanModel, lane: Lane, channel: ChannelParameters, knot: Knot): Circuit {
+/** The circuit of a lane at each of its knots. */
+function circuitsOf(model: PlanModel, lane: Lane, channel: ChannelParameters): (knot: Knot) => Circuit {
   const groups = lane.step.groupIndexes;
   const joined = lane.step.way === 'paralleled';
   const capacity = groups.reduce((sum, group) => sum + model.groups[group]!.capacityAh, 0);
   const shares = groups.map((group) => (joined ? model.groups[group]!.capacityAh / capacity : 1 / groups.length));
   const ohms = groups.map((group) => model.groups[group]!.ohmicResistanceOhm);
-  const meanSoc = groups.reduce((sum, group, at) => sum + shares[at]! * knot.state.soc[group]!, 0);
-  const meanVolts = groups.reduce(
-    (sum, group, at) => sum + shares[at]! * voltsAtSoc(model.curve, knot.state.soc[group]!),
-    0,
-  );
   const count = joined ? 1 : groups.length;
-  return {
-    lane,
-    channel,
-    knot,
-    count,
-    groups,
-    shares,
-    fullAmps:
-      lane.step.setAmps === null
-        ? null
-        : Math.min(lane.step.setAmps, (channel.maxWatts ?? Infinity) / (count * meanVolts)),
-    ohmicOhm: joined
-      ? 1 / ohms.reduce((sum, ohm) => sum + 1 / ohm, 0)
-      : ohms.reduce((sum, ohm) => sum + ohm, 0) / ohms.length,
-    linkOhm: lane.step.way === 'terminals' ? model.input.module.linkResistanceOhm / groups.length : 0,
-    unevenVolts: joined ? 0 : meanVolts - voltsAtSoc(model.curve, meanSoc),
+  const ohmicOhm = joined
+    ? 1 / ohms.reduce((sum, ohm) => sum + 1 / ohm, 0)
+    : ohms.reduce((sum, ohm) => sum + ohm, 0) / ohms.length;
+  const linkOhm = lane.step.way === 'terminals' ? model.input.module.linkResistanceOhm / groups.length : 0;
+  const { setAmps } = lane.step;
+  const curve = compileCurve(model.curve);
+  return (knot) => {
+    let meanSoc = 0;
+    let meanVolts = 0;
+    for (let at = 0; at < groups.length; at += 1) {
+      const soc = knot.state.soc[groups[at]!]!;
+      meanSoc += shares[at]! * soc;
+      meanVolts += shares[at]! * curveVolts(curve, soc);
+    }
+    return {
+      lane,
+      channel,
+      knot,
+      count,
+      groups,
+      shares,
+      fullAmps: setAmps === null ? null : Math.min(setAmps, (channel.maxWatts ?? Infinity) / (count * meanVolts)),
+      ohmicOhm,
+      linkOhm,
+      unevenVolts: joined ? 0 : meanVolts - curveVolts(curve, meanSoc),
+    };
   };
 }
 

@@ -1,11 +1,9 @@
 import type { PlanModel } from '../plan/plan-model';
-import { SAMPLE_AXES } from '../plan/samples';
+import { slopesOf } from './live-facts';
 import { LIVE_SPREADS } from './live-spreads';
 import type { Observation } from './observations';
 import { ODD_OFF, type OddLook } from './odd-run';
 import type { ParticleSet } from './particle-set';
-
-const TEMPERATURE = SAMPLE_AXES.indexOf('temperature');
 
 /** The first temperature of the charge, which later ones are held against. */
 export interface WarmFrom {
@@ -27,7 +25,7 @@ export function oddCelsius(model: PlanModel, set: ParticleSet, at: Observation, 
   const expected = start.celsius + (at.ownHeatKelvin - start.ownHeatKelvin) + fromRoom;
   const startSd =
     from === null
-      ? model.spreads.temperatureCelsius * Math.sqrt(set.moments((sample) => sample.draws[TEMPERATURE]!).variance)
+      ? model.spreads.temperatureCelsius * Math.sqrt(set.moments(slopesOf({ temperature: 1 })).variance)
       : LIVE_SPREADS.celsius;
   const off = (celsius - expected) / Math.hypot(startSd, LIVE_SPREADS.celsius, LIVE_SPREADS.celsiusDrift);
   if (off < ODD_OFF) return null;

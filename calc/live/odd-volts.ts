@@ -23,7 +23,7 @@ export function oddVolts(
   const jumped = jump !== null && Math.abs(jump) >= JUMP_OFF;
   if (Math.abs(level) < ODD_OFF && !jumped) return null;
   const up = (jumped ? jump : level) * circuit.lane.sign > 0;
-  const expected = set.moments(look.expected).mean;
+  const expected = look.volts - circuit.count * set.meanOff(look);
   const off = Math.max(Math.abs(level), jumped ? Math.abs(jump) : 0);
   if (at.kept.reading.terminalVolts === null) {
     // Read were the amps alone: in a taper they say how far the set voltage stands above the module.

@@ -1,10 +1,9 @@
-import type { PlanModel } from '../plan/plan-model';
-import type { Sample } from '../plan/samples';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { choleskyLower, effectiveSampleSize, systematicResample } from '../statistics/particle-weights';
 import { seededRandom } from '../statistics/seeded-random';
 import { weightedCovariance } from '../statistics/weighted-covariance';
-import { liveDraws, liveSample, readAxes } from './live-draws';
+import { liveDraws, LIVE_AXES } from './live-draws';
+import { NO_PLACE, type LiveFacts, type Residual } from './live-facts';
 import { posteriorOf } from './posterior';
 
 /** Resampled below this share of the samples. */
@@ -26,9 +25,9 @@ const MEMORY_COUNT = 4;
 /** One kind of reading under the samples: what was read less what each sample has for it. */
 export interface Look {
   memory: Memory;
-  residual: (sample: Sample) => number;
+  residual: Residual;
   /** Where it is not known which of two things was read: what was read less the other; both are as likely. */
-  otherResidual?: (sample: Sample) => number;
+  otherResidual?: Residual;
   /** What one standard deviation of the error that the readings share makes here. */
   sharedSd: number;
   /** Share of it that is left since the last reading of the kind. */
@@ -47,50 +46,69 @@ export interface Look {
  * share. A hundred readings that share an error are therefore worth little more than one.
  */
 export class ParticleSet {
-  samples: Sample[];
   weights: Float64Array;
+  /** `LIVE_AXES` a sample. */
+  private draws: Float64Array;
+  /** What the looks see of each. */
+  private columns: Float64Array;
   /** The looks that were taken in, in their order. */
   private readonly taken: Look[] = [];
-  /** What the shared errors are likely to be, one a kind and sample. */
+  /** What the shared errors are likely to be, of all samples kind by kind. */
   private memory: Float64Array;
   private readonly variance = [NaN, NaN, NaN, NaN];
-  private readonly axes: number[];
   private readonly random: () => number;
   /** Room for one number of each sample. */
   private values: Float64Array;
   private readonly prior: Float64Array;
   private readonly off: Float64Array;
   private readonly log: Float64Array;
-  /** Of the look that was asked for last and these samples: what was read less what each has, and less the other. */
-  private asked: { look: Look; residual: Float64Array; other: Float64Array | null } | null = null;
+  /** The look that was asked for last, and of it what was read less what each sample has, and less the other. */
+  private asked: Look | null = null;
+  private residual: Float64Array;
+  private other: Float64Array;
   /** Any reading was taken in. */
   read = false;
 
-  /** @param count of the samples that judge each reading by those before it */
+  /**
+   * @param axes that readings say something of
+   * @param count of the samples that judge each reading by those before it
+   */
   constructor(
-    private readonly model: PlanModel,
+    private readonly facts: LiveFacts,
+    private readonly axes: readonly number[],
     private count: number,
     private readonly seed: number,
   ) {
-    this.samples = liveDraws(count, seed).map((draws) => liveSample(model, draws));
+    this.draws = liveDraws(count, seed).slice();
+    this.columns = facts.columnsOf(this.draws);
     this.weights = new Float64Array(count).fill(1 / count);
     this.memory = new Float64Array(count * MEMORY_COUNT);
     this.values = new Float64Array(count);
     this.prior = new Float64Array(count);
     this.off = new Float64Array(count);
     this.log = new Float64Array(count);
-    this.axes = readAxes(model);
+    this.residual = new Float64Array(count);
+    this.other = new Float64Array(count);
     this.random = seededRandom(seed + 1);
   }
 
-  /** Mean and variance of a number over the samples. */
-  moments(of: (sample: Sample, at: number) => number): { mean: number; variance: number } {
-    const { samples, weights, count, values } = this;
+  /** Of one sample, in the order of `LIVE_AXES`. */
+  drawsOf(at: number): number[] {
+    const own: number[] = [];
+    for (let axis = 0; axis < LIVE_AXES; axis += 1) own.push(this.draws[at * LIVE_AXES + axis]!);
+    return own;
+  }
+
+  /** Mean and variance over the samples of a number that is straight in their facts. */
+  moments(slopes: readonly number[]): { mean: number; variance: number } {
+    this.facts.residuals({ read: 0, ...NO_PLACE, slopes }, this.columns, this.values);
+    return this.momentsOf(this.values);
+  }
+
+  private momentsOf(values: Float64Array): { mean: number; variance: number } {
+    const { weights, count } = this;
     let mean = 0;
-    for (let at = 0; at < count; at += 1) {
-      values[at] = of(samples[at]!, at);
-      mean += weights[at]! * values[at]!;
-    }
+    for (let at = 0; at < count; at += 1) mean += weights[at]! * values[at]!;
     let variance = 0;
     for (let at = 0; at < count; at += 1) variance += weights[at]! * (values[at]! - mean) ** 2;
     return { mean, variance };
@@ -100,7 +118,7 @@ export class ParticleSet {
   sharedOf(memory: Memory, at: number): { mean: number; variance: number | null } {
     const column = MEMORIES[memory];
     const variance = this.variance[column]!;
-    return { mean: this.memory[at * MEMORY_COUNT + column]!, variance: Number.isNaN(variance) ? null : variance };
+    return { mean: this.memory[column * this.count + at]!, variance: Number.isNaN(variance) ? null : variance };
   }
 
   /** Variance of the shared error before a look, of the whole of it. */
@@ -114,37 +132,41 @@ export class ParticleSet {
    * where the readings before it have it (`jump`, null for the first of its kind).
    */
   offOf(look: Look, jumpSd: number): { level: number; jump: number | null } {
+    const { memory, count, values } = this;
     const column = MEMORIES[look.memory];
     const nearer = this.nearerResidual(look);
-    const level = this.moments((_, at) => nearer[at]!);
+    const level = this.momentsOf(nearer);
     const whole = Math.sqrt(level.variance + look.sharedSd ** 2 + look.ownVariance);
     if (Number.isNaN(this.variance[column]!)) return { level: level.mean / whole, jump: null };
     const kept = look.keptSmooth ?? look.kept;
-    const step = this.moments((_, at) => nearer[at]! - look.sharedSd * kept * this.memory[at * MEMORY_COUNT + column]!);
+    for (let at = 0; at < count; at += 1)
+      values[at] = nearer[at]! - look.sharedSd * kept * memory[column * count + at]!;
+    const step = this.momentsOf(values);
     const shared = look.sharedSd ** 2 * this.before(look, kept);
     const small = Math.sqrt(step.variance + shared + look.ownVariance + jumpSd ** 2);
     return { level: level.mean / whole, jump: step.mean / small };
   }
 
+  /** What was read less what the samples have for it, mean. */
+  meanOff(look: Look): number {
+    this.ask(look);
+    return this.momentsOf(this.residual).mean;
+  }
+
   private nearerResidual(look: Look): Float64Array {
-    const { residual, other } = this.residualsOf(look);
-    if (other === null) return residual;
-    const far = (of: Float64Array): number => Math.abs(this.moments((_, at) => of[at]!).mean);
+    this.ask(look);
+    const { residual, other } = this;
+    if (!look.otherResidual) return residual;
+    const far = (of: Float64Array): number => Math.abs(this.momentsOf(of).mean);
     return far(residual) <= far(other) ? residual : other;
   }
 
   /** A look is judged before it is taken in: what the samples have for it is worked out once. */
-  private residualsOf(look: Look): { residual: Float64Array; other: Float64Array | null } {
-    if (this.asked?.look === look) return this.asked;
-    const { residual, otherResidual } = look;
-    const values = new Float64Array(this.count);
-    const others = otherResidual ? new Float64Array(this.count) : null;
-    for (let at = 0; at < this.count; at += 1) {
-      values[at] = residual(this.samples[at]!);
-      if (others) others[at] = otherResidual!(this.samples[at]!);
-    }
-    this.asked = { look, residual: values, other: others };
-    return this.asked;
+  private ask(look: Look): void {
+    if (this.asked === look) return;
+    this.asked = look;
+    this.facts.residuals(look.residual, this.columns, this.residual);
+    if (look.otherResidual) this.facts.residuals(look.otherResidual, this.columns, this.other);
   }
 
   /** Reweights by a look; resamples with jitter where the effective sample size falls below half. */
@@ -157,9 +179,7 @@ export class ParticleSet {
     let left = 1;
     this.lookAt(look, variance);
     for (let part = 0; left > 0; part += 1) {
-      const share = part === MOST_PARTS ? left : this.bearable(left);
-      this.reweigh(share);
-      left -= share;
+      left -= this.reweigh(left, part === MOST_PARTS);
       if (effectiveSampleSize(this.weights) <= LEAST_SHARE * this.count * 1.001) {
         this.resample();
         this.lookAt(look, variance);
@@ -167,72 +187,72 @@ export class ParticleSet {
     }
     const gain = (look.sharedSd * before) / variance;
     for (let at = 0; at < this.count; at += 1)
-      this.memory[at * MEMORY_COUNT + column] = this.prior[at]! + gain * this.off[at]!;
+      this.memory[column * this.count + at] = this.prior[at]! + gain * this.off[at]!;
     this.variance[column] = (1 - gain * look.sharedSd) * before;
   }
 
   /** Of each sample: what it expects of the shared error, how far off the look is then, and the logarithm of its likelihood. */
   private lookAt(look: Look, variance: number): void {
+    this.ask(look);
+    const { count, memory, prior, off, log, residual, other } = this;
     const column = MEMORIES[look.memory];
-    const known = !Number.isNaN(this.variance[column]!);
-    const { residual, other: others } = this.residualsOf(look);
-    for (let at = 0; at < this.count; at += 1) {
-      const prior = known ? look.kept * this.memory[at * MEMORY_COUNT + column]! : 0;
-      this.prior[at] = prior;
-      const off = residual[at]! - look.sharedSd * prior;
-      if (others === null) {
-        this.off[at] = off;
-        this.log[at] = (-0.5 * off * off) / variance;
-        continue;
-      }
-      const other = others[at]! - look.sharedSd * prior;
-      const [near, far] = Math.abs(off) <= Math.abs(other) ? [off, other] : [other, off];
+    const kept = Number.isNaN(this.variance[column]!) ? 0 : look.kept;
+    for (let at = 0; at < count; at += 1) {
+      prior[at] = kept * memory[column * count + at]!;
+      off[at] = residual[at]! - look.sharedSd * prior[at]!;
+      log[at] = (-0.5 * off[at]! * off[at]!) / variance;
+    }
+    if (!look.otherResidual) return;
+    for (let at = 0; at < count; at += 1) {
+      const own = off[at]!;
+      const second = other[at]! - look.sharedSd * prior[at]!;
+      const near = Math.abs(own) <= Math.abs(second) ? own : second;
+      const far = near === own ? second : own;
       const ratio = Math.exp((-0.5 * (far * far - near * near)) / variance);
-      this.off[at] = (near + ratio * far) / (1 + ratio);
-      this.log[at] = (-0.5 * near * near) / variance + Math.log((1 + ratio) / 2);
+      off[at] = (near + ratio * far) / (1 + ratio);
+      log[at] = (-0.5 * near * near) / variance + Math.log((1 + ratio) / 2);
     }
   }
 
-  /** The largest share of what is left of a look that keeps half the samples effective. */
-  private bearable(left: number): number {
+  /**
+   * Takes in the largest share of what is left of a look that keeps half the samples effective.
+   *
+   * @param whole takes it all, come what may
+   * @returns the share
+   */
+  private reweigh(left: number, whole: boolean): number {
     const least = LEAST_SHARE * this.count;
-    if (this.sizeAfter(left) >= least) return left;
-    let low = 0;
-    let high = left;
-    for (let pass = 0; pass < 12; pass += 1) {
-      const middle = (low + high) / 2;
-      if (this.sizeAfter(middle) >= least) low = middle;
-      else high = middle;
-    }
-    return high;
-  }
-
-  private most(): number {
     let most = -Infinity;
-    for (let at = 0; at < this.count; at += 1) if (this.log[at]! > most) most = this.log[at]!;
-    return most;
+    for (let at = 0; at < this.count; at += 1) most = Math.max(most, this.log[at]!);
+    let share = left;
+    if (this.weighedBy(left, most) < least && !whole) {
+      let low = 0;
+      for (let pass = 0; pass < 12; pass += 1) {
+        const middle = (low + share) / 2;
+        if (this.weighedBy(middle, most) >= least) low = middle;
+        else share = middle;
+      }
+      this.weighedBy(share, most);
+    }
+    const { count, weights, values } = this;
+    let sum = 0;
+    for (let at = 0; at < count; at += 1) sum += values[at]!;
+    for (let at = 0; at < count; at += 1) weights[at] = values[at]! / sum;
+    return share;
   }
 
-  private sizeAfter(share: number): number {
-    const most = this.most();
+  /** What the samples weigh after a share of the look, into `values`, and how many are effective then. */
+  private weighedBy(share: number, most: number): number {
+    const { count, weights, values, log } = this;
     let sum = 0;
     let squares = 0;
-    for (let at = 0; at < this.count; at += 1) {
-      const weight = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
+    for (let at = 0; at < count; at += 1) {
+      const weight = weights[at]! * Math.exp(share * (log[at]! - most));
+      values[at] = weight;
       sum += weight;
       squares += weight * weight;
     }
     return (sum * sum) / squares;
-  }
-
-  private reweigh(share: number): void {
-    const most = this.most();
-    let sum = 0;
-    for (let at = 0; at < this.count; at += 1) {
-      this.weights[at] = this.weights[at]! * Math.exp(share * (this.log[at]! - most));
-      sum += this.weights[at]!;
-    }
-    for (let at = 0; at < this.count; at += 1) this.weights[at] = this.weights[at]! / sum;
   }
 
   /**
@@ -242,26 +262,29 @@ export class ParticleSet {
    */
   settle(count: number): void {
     if (!this.read) return;
-    const settled = posteriorOf(this.model, this.taken, liveDraws(count, this.seed), this.axes);
+    const settled = posteriorOf(this.facts, this.taken, liveDraws(count, this.seed), this.axes);
     this.count = count;
     this.values = new Float64Array(count);
-    this.samples = settled.samples;
+    this.residual = new Float64Array(count);
+    this.other = new Float64Array(count);
+    this.draws = settled.draws;
+    this.columns = settled.columns;
     this.weights = settled.weights;
     this.memory = settled.memory;
     this.asked = null;
   }
 
   private resample(): void {
-    const { axes, count, weights } = this;
+    const { axes, count, weights, draws } = this;
     // Errors that nothing was read of yet are the same in all.
     const columns = this.variance.flatMap((one, column) => (Number.isNaN(one) ? [] : [column]));
     const size = axes.length + columns.length;
     const rows = new Float64Array(count * size);
     const mean = new Float64Array(size);
     for (let at = 0; at < count; at += 1) {
-      const { draws } = this.samples[at]!;
+      const own = at * LIVE_AXES;
       for (let k = 0; k < size; k += 1) {
-        const value = k < axes.length ? draws[axes[k]!]! : this.memory[at * MEMORY_COUNT + columns[k - axes.length]!]!;
+        const value = k < axes.length ? draws[own + axes[k]!]! : this.memory[columns[k - axes.length]! * count + at]!;
         rows[at * size + k] = value;
         mean[k]! += weights[at]! * value;
       }
@@ -273,14 +296,14 @@ export class ParticleSet {
     for (let at = 0; at < count; at += 1) {
       const from = picked[at]! * size;
       for (let k = 0; k < size; k += 1) noise[k] = JITTER * inverseNormal(Math.max(1e-12, this.random()));
-      const draws = this.samples[at]!.draws.slice();
+      const own = at * LIVE_AXES;
       for (let k = 0; k < size; k += 1) {
         let value = mean[k]! + SHRINK * (rows[from + k]! - mean[k]!);
         for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * noise[j]!;
-        if (k < axes.length) draws[axes[k]!] = value;
-        else memory[at * MEMORY_COUNT + columns[k - axes.length]!] = value;
+        if (k < axes.length) draws[own + axes[k]!] = value;
+        else memory[columns[k - axes.length]! * count + at] = value;
       }
-      this.samples[at] = liveSample(this.model, draws);
+      this.facts.write(draws, this.columns, at);
     }
     this.memory = memory;
     this.asked = null;

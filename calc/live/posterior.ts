@@ -1,9 +1,8 @@
-import type { PlanModel } from '../plan/plan-model';
-import type { Sample } from '../plan/samples';
 import { choleskyInverse, choleskySolve } from '../statistics/cholesky-solve';
 import { choleskyLower, effectiveSampleSize } from '../statistics/particle-weights';
 import { weightedCovariance } from '../statistics/weighted-covariance';
-import { liveSample } from './live-draws';
+import { LIVE_AXES } from './live-draws';
+import type { LiveFacts } from './live-facts';
 import { MEMORIES, type Look } from './particle-set';
 
 const MEMORY_COUNT = 4;
@@ -23,9 +22,12 @@ const COUNT_AN_AXIS = 8;
 
 /** Samples that stand for all that was read, with their weights and what each has for the shared errors. */
 export interface Posterior {
-  samples: Sample[];
+  /** `LIVE_AXES` a sample. */
+  draws: Float64Array;
+  /** Their facts. */
+  columns: Float64Array;
   weights: Float64Array;
-  /** `MEMORY_COUNT` a sample. */
+  /** Of all samples kind by kind. */
   memory: Float64Array;
 }
 
@@ -54,22 +56,55 @@ function chainOf(looks: readonly Look[]): Chain[] {
 }
 
 /**
- * How far each look is off in one sample, in standard deviations, with the errors that looks share followed on the way.
- *
- * @param memory takes what the sample has for the shared errors in the end
+ * How far looks are off in each of so many samples, in standard deviations, with the errors that looks share followed on the
+ * way: look by look, since all samples go through the same.
  */
-function offIn(chain: readonly Chain[], sample: Sample, memory: Float64Array, into: Float64Array): void {
-  memory.fill(0);
-  for (let at = 0; at < chain.length; at += 1) {
-    const { look, column, kept, gain, perSd } = chain[at]!;
-    const prior = kept * memory[column]!;
-    let off = look.residual(sample) - look.sharedSd * prior;
-    if (look.otherResidual) {
-      const other = look.otherResidual(sample) - look.sharedSd * prior;
-      if (Math.abs(other) < Math.abs(off)) off = other;
+class Offs {
+  /** What each sample has for the shared errors in the end, of all samples kind by kind. */
+  readonly memory: Float64Array;
+  /** Sum of the squares in each. */
+  readonly squares: Float64Array;
+  private readonly residual: Float64Array;
+  private readonly other: Float64Array;
+
+  constructor(
+    private readonly facts: LiveFacts,
+    private readonly chain: readonly Chain[],
+    private readonly count: number,
+  ) {
+    this.memory = new Float64Array(count * MEMORY_COUNT);
+    this.squares = new Float64Array(count);
+    this.residual = new Float64Array(count);
+    this.other = new Float64Array(count);
+  }
+
+  /**
+   * @param columns facts of the samples
+   * @param into takes the looks one after the other, `count` each
+   */
+  follow(columns: Float64Array, into?: Float64Array): void {
+    const { facts, chain, count, memory, squares, residual, other } = this;
+    memory.fill(0);
+    squares.fill(0);
+    for (let row = 0; row < chain.length; row += 1) {
+      const { look, column, kept, gain, perSd } = chain[row]!;
+      const { sharedSd, otherResidual } = look;
+      facts.residuals(look.residual, columns, residual);
+      if (otherResidual) facts.residuals(otherResidual, columns, other);
+      for (let at = 0; at < count; at += 1) {
+        const place = column * count + at;
+        const prior = kept * memory[place]!;
+        let own = residual[at]! - sharedSd * prior;
+        if (otherResidual) {
+          const second = other[at]! - sharedSd * prior;
+          if (Math.abs(second) < Math.abs(own)) own = second;
+        }
+        memory[place] = prior + gain * own;
+        const off = own * perSd;
+        squares[at] = squares[at]! + off * off;
+        if (into) into[row * count + at] = off;
+      }
     }
-    memory[column] = prior + gain * off;
-    into[at] = off * perSd;
   }
 }
 
@@ -78,57 +113,56 @@ function offIn(chain: readonly Chain[], sample: Sample, memory: Float64Array, in
  * them, each with its exact weight (importance sampling about a Gauss–Newton fit). Unlike samples that are resampled reading
  * by reading, their middle does not wander with the seed.
  *
- * @param draws even standard normal draws of all axes; those that nothing was read of stay as they are
+ * @param even standard normal draws of all axes; those that nothing was read of stay as they are
  * @param axes that readings say something of
  */
 export function posteriorOf(
-  model: PlanModel,
+  facts: LiveFacts,
   looks: readonly Look[],
-  draws: readonly (readonly number[])[],
+  even: Float64Array,
   axes: readonly number[],
 ): Posterior {
   const chain = chainOf(looks);
   const size = axes.length;
-  const count = draws.length;
-  const memory = new Float64Array(MEMORY_COUNT);
-  const full = new Array<number>(draws[0]!.length).fill(0);
-  const at = (x: Float64Array, into: Float64Array): void => {
-    const own = full.slice();
-    for (let k = 0; k < size; k += 1) own[axes[k]!] = x[k]!;
-    offIn(chain, liveSample(model, own), memory, into);
-  };
-  let { centre, lower } = fit(at, chain.length, size);
+  const count = even.length / LIVE_AXES;
+  const z = readDraws(even, axes);
+  let { centre, lower } = fit(facts, chain, axes);
   let best: (Posterior & { worth: number }) | null = null;
-  const off = new Float64Array(chain.length);
   for (let round = 1; ; round += 1) {
-    const samples: Sample[] = [];
+    const draws = even.slice();
     const logs = new Float64Array(count);
-    const memories = new Float64Array(count * MEMORY_COUNT);
-    const rows = new Float64Array(count * size);
-    for (let one = 0; one < count; one += 1) {
-      const own = draws[one]!.slice();
+    const values = new Float64Array(count * size);
+    for (let at = 0; at < count; at += 1) {
+      const from = at * size;
       let log = 0;
       for (let k = 0; k < size; k += 1) {
-        const z = draws[one]![axes[k]!]!;
         let value = centre[k]!;
-        for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * draws[one]![axes[j]!]!;
-        own[axes[k]!] = value;
-        rows[one * size + k] = value;
-        log += 0.5 * (z * z - value * value);
+        for (let j = 0; j <= k; j += 1) value += lower[k * size + j]! * z[from + j]!;
+        draws[at * LIVE_AXES + axes[k]!] = value;
+        values[from + k] = value;
+        log += 0.5 * (z[from + k]! * z[from + k]! - value * value);
       }
-      const sample = liveSample(model, own);
-      samples.push(sample);
-      offIn(chain, sample, memory, off);
-      for (let k = 0; k < off.length; k += 1) log -= 0.5 * off[k]! * off[k]!;
-      memories.set(memory, one * MEMORY_COUNT);
-      logs[one] = log;
+      logs[at] = log;
     }
+    const columns = facts.columnsOf(draws);
+    const offs = new Offs(facts, chain, count);
+    offs.follow(columns);
+    for (let at = 0; at < count; at += 1) logs[at] = logs[at]! - 0.5 * offs.squares[at]!;
     const weights = weightsOf(logs, 1);
     const worth = effectiveSampleSize(weights);
-    if (best === null || worth > best.worth) best = { samples, weights, memory: memories, worth };
+    if (best === null || worth > best.worth) best = { draws, columns, weights, memory: offs.memory, worth };
     if (round === MOST_ROUNDS || worth >= ENOUGH_SHARE * count) return best;
-    ({ centre, lower } = about(rows, flattened(logs, COUNT_AN_AXIS * size), size));
+    ({ centre, lower } = about(values, flattened(logs, COUNT_AN_AXIS * size), size));
   }
+}
+
+/** The draws of the axes that readings say something of, a row a sample. */
+function readDraws(even: Float64Array, axes: readonly number[]): Float64Array {
+  const size = axes.length;
+  const read = new Float64Array((even.length / LIVE_AXES) * size);
+  for (let at = 0; at * size < read.length; at += 1)
+    for (let k = 0; k < size; k += 1) read[at * size + k] = even[at * LIVE_AXES + axes[k]!]!;
+  return read;
 }
 
 /** Weights of the logarithms, each taken times `power`; their sum is 1. */
@@ -148,26 +182,30 @@ function flattened(logs: Float64Array, least: number): Float64Array {
 }
 
 /** The likeliest draws under readings and prior, and the spread about them where the model is straight. */
-function fit(at: (x: Float64Array, into: Float64Array) => void, looks: number, size: number) {
+function fit(facts: LiveFacts, chain: readonly Chain[], axes: readonly number[]) {
+  const size = axes.length;
+  const looks = chain.length;
   const centre = new Float64Array(size);
   const base = new Float64Array(looks);
-  const moved = new Float64Array(looks);
+  const moved = new Float64Array(looks * size);
   const slopes = new Float64Array(looks * size);
   const normal = new Float64Array(size * size);
-  let worth = Infinity;
+  const one = new Offs(facts, chain, 1);
+  const nudged = new Offs(facts, chain, size);
   const worthOf = (x: Float64Array): number => {
-    at(x, moved);
-    return moved.reduce((sum, one) => sum + one * one, 0) + x.reduce((sum, one) => sum + one * one, 0);
+    const own = new Float64Array(LIVE_AXES);
+    for (let k = 0; k < size; k += 1) own[axes[k]!] = x[k]!;
+    one.follow(facts.columnsOf(own), base);
+    return one.squares[0]! + x.reduce((sum, value) => sum + value * value, 0);
   };
   for (let step = 0; step < MOST_STEPS; step += 1) {
-    at(centre, base);
-    worth = base.reduce((sum, one) => sum + one * one, 0) + centre.reduce((sum, one) => sum + one * one, 0);
-    for (let k = 0; k < size; k += 1) {
-      const x = centre.slice();
-      x[k] = x[k]! + NUDGE;
-      at(x, moved);
-      for (let row = 0; row < looks; row += 1) slopes[row * size + k] = (moved[row]! - base[row]!) / NUDGE;
-    }
+    const worth = worthOf(centre);
+    const near = new Float64Array(size * LIVE_AXES);
+    for (let k = 0; k < size; k += 1)
+      for (let j = 0; j < size; j += 1) near[k * LIVE_AXES + axes[j]!] = centre[j]! + (j === k ? NUDGE : 0);
+    nudged.follow(facts.columnsOf(near), moved);
+    for (let row = 0; row < looks; row += 1)
+      for (let k = 0; k < size; k += 1) slopes[row * size + k] = (moved[row * size + k]! - base[row]!) / NUDGE;
     normal.fill(0);
     const right = new Float64Array(size);
     for (let k = 0; k < size; k += 1) {
@@ -185,7 +223,7 @@ function fit(at: (x: Float64Array, into: Float64Array) => void, looks: number, s
     for (let k = 0; k < size; k += 1) length = Math.max(length, Math.abs(move[k]!));
     // Where the model bends, a whole step may lead too far.
     for (let share = 1; share > 0.1; share /= 2) {
-      const x = centre.map((one, k) => one + share * move[k]!);
+      const x = centre.map((from, k) => from + share * move[k]!);
       if (worthOf(x) <= worth || share <= 0.25) {
         centre.set(x);
         break;

@@ -49,7 +49,8 @@ export function reckonCharge(input: ReckonInput): Reckoning {
 
   const fixed = fixedClock(model, input, replay, past, ahead, over);
   const secondsIn = learnedTimes(planned, model, replay, ahead);
-  const seconds = model.samples.map((sample, at) => finishOf(fixed, ahead, (lane) => secondsIn(lane, sample, at)));
+  const samples = model.samples();
+  const seconds = samples.map((sample, at) => finishOf(fixed, ahead, (lane) => secondsIn(lane, sample, at)));
   const byS = bandOf(seconds, model.weights);
   const clock = likelyClock(fixed, ahead, byS.p50);
   const readyS = shifted(byS, clock.readyS - byS.p50);
@@ -91,9 +92,7 @@ export function reckonCharge(input: ReckonInput): Reckoning {
     lagVolts: groups.lagVolts,
     expected: expectedAt(planned, replay, nowS),
     dominant:
-      model.weights === null
-        ? dominantDoubt(model.samples, seconds).dominant
-        : liveDoubt(model.samples, model.weights, seconds),
+      model.weights === null ? dominantDoubt(samples, seconds).dominant : liveDoubt(samples, model.weights, seconds),
     readingChance: followed.chance,
     odd: followed.odd,
     learned: followed.learned,

@@ -1,8 +1,10 @@
 import { joinGroups } from '../charge-paralleled';
 import { chargeThroughTerminals } from '../charge-through-terminals';
-import { voltsAtSoc } from '../curve/ocv';
+import { compileCurve } from '../curve/compiled-curve';
+import { curveVolts } from '../curve/ocv';
 import type { ChannelParameters, PlannedStep } from '../plan-types';
 import type { PlanModel } from '../plan/plan-model';
+import { mean } from '../statistics/mean';
 import type { CellGroup, Source } from '../types';
 import type { Drive, Forward, Lane } from './lane';
 import type { ModuleState } from './module-state';
@@ -28,16 +30,36 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
   const aimVolts = joined
     ? step.restVoltsAfter[step.groupIndexes[0]!]!
     : step.groupIndexes.reduce((sum, group) => sum + step.restVoltsAfter[group]!, 0);
-  const groupsOf = (state: ModuleState): CellGroup[] => {
-    const groups = step.groupIndexes.map((group) => ({
-      capacityAh: model.groups[group]!.capacityAh,
-      ohmicResistanceOhm: model.groups[group]!.ohmicResistanceOhm,
-      polarisationResistanceOhm: model.groups[group]!.polarisationResistanceOhm,
-      polarisationTimeConstantS: model.groups[group]!.polarisationTimeConstantS,
-      restVolts: voltsAtSoc(model.curve, state.soc[group]!),
-      polarisationVolts: state.over[group]!,
+  const curve = compileCurve(model.curve);
+  const { groupIndexes } = step;
+  const own = groupIndexes.map((group) => model.groups[group]!);
+  const parts = joined ? [joinGroups(own, model.curve)] : own;
+  const capacityAh = own.reduce((sum, group) => sum + group.capacityAh, 0);
+  /** Groups that are joined share their charge. */
+  const joinedSoc = ({ soc }: ModuleState): number =>
+    groupIndexes.reduce((charge, group, at) => charge + soc[group]! * own[at]!.capacityAh, 0) / capacityAh;
+  const socOf = (state: ModuleState, at: number): number => (joined ? joinedSoc(state) : state.soc[groupIndexes[at]!]!);
+  const overOf = (state: ModuleState, at: number): number =>
+    joined ? mean(groupIndexes.map((group) => state.over[group]!)) : state.over[groupIndexes[at]!]!;
+  const groupsOf = (state: ModuleState): CellGroup[] =>
+    parts.map((part, at) => ({
+      ...part,
+      restVolts: curveVolts(curve, socOf(state, at)),
+      polarisationVolts: overOf(state, at),
     }));
-    return joined ? [{ ...joinGroups(groups, model.curve), polarisationVolts: meanOver(state, step) }] : groups;
+  let known: { restVolts: number; volts: number } | null = null;
+  let knownOf: ModuleState | null = null;
+  /** Summed rest voltage, and with what is over it; kept, since a state is asked for several times in a row. */
+  const voltsOf = (state: ModuleState): { restVolts: number; volts: number } => {
+    if (known !== null && knownOf === state) return known;
+    let restVolts = 0;
+    let over = 0;
+    for (let at = 0; at < parts.length; at += 1) {
+      restVolts += curveVolts(curve, socOf(state, at));
+      over += overOf(state, at);
+    }
+    knownOf = state;
+    return (known = { restVolts, volts: restVolts + over });
   };
   const driven = (drive: Drive): Source => ({
     ...source,
@@ -101,10 +123,8 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     };
   };
 
-  const totalOhm = (groups: CellGroup[]): number =>
-    groups.reduce((sum, group) => sum + group.ohmicResistanceOhm, linkOhm + source.leadResistanceOhm);
-  const electromotive = (groups: CellGroup[]): number =>
-    groups.reduce((sum, group) => sum + group.restVolts + (group.polarisationVolts ?? 0), 0);
+  const moduleOhm = parts.reduce((sum, part) => sum + part.ohmicResistanceOhm, linkOhm);
+  const totalOhm = moduleOhm + source.leadResistanceOhm;
 
   return {
     index,
@@ -115,43 +135,39 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
     touched: step.groupIndexes,
     forward,
     ampsAt: (state, drive) => {
-      const groups = groupsOf(state);
       const { maxAmps, setVolts, maxWatts, loadOhm } = driven(drive);
-      const volts = electromotive(groups);
-      const ohm = totalOhm(groups);
-      const root = maxWatts === null ? 0 : volts * volts + sign * 4 * ohm * maxWatts;
-      const limits = [
+      const { volts } = voltsOf(state);
+      const root = maxWatts === null ? 0 : volts * volts + sign * 4 * totalOhm * maxWatts;
+      const least = Math.min(
         maxAmps ?? Infinity,
-        setVolts === null ? Infinity : (sign * (setVolts - volts)) / ohm,
+        setVolts === null ? Infinity : (sign * (setVolts - volts)) / totalOhm,
         maxWatts === null || root <= 0 ? Infinity : (2 * maxWatts) / (volts + Math.sqrt(root)),
-        loadOhm === null ? Infinity : volts / (ohm + loadOhm),
-      ];
-      return Math.max(0, Math.min(...limits));
+        loadOhm === null ? Infinity : volts / (totalOhm + loadOhm),
+      );
+      return Math.max(0, least);
     },
     moved: (state, fromAmps, toAmps, seconds) => {
       if (seconds <= 0) return state;
-      const groups = groupsOf(state);
-      const from = joined ? [joinedSoc(model, state, step)] : step.groupIndexes.map((group) => state.soc[group]!);
       const ampHours = ((fromAmps + toAmps) / 2) * (seconds / 3600);
-      return spread(
-        state,
-        seconds,
-        groups.map((group, at) => from[at]! + (sign * efficiency * ampHours) / group.capacityAh),
-        groups.map((group) => overAfter(group, sign * fromAmps, sign * toAmps, seconds)),
-      );
+      const soc: number[] = [];
+      const over: number[] = [];
+      let tau = NaN;
+      let decay = NaN;
+      for (let at = 0; at < parts.length; at += 1) {
+        const part = parts[at]!;
+        if (part.polarisationTimeConstantS !== tau) {
+          tau = part.polarisationTimeConstantS;
+          decay = Math.exp(-seconds / tau);
+        }
+        soc.push(socOf(state, at) + (sign * efficiency * ampHours) / part.capacityAh);
+        over.push(overAfter(part, overOf(state, at), sign * fromAmps, sign * toAmps, seconds, decay));
+      }
+      return spread(state, seconds, soc, over);
     },
-    clipVolts: (state, amps) => {
-      const groups = groupsOf(state);
-      return (
-        electromotive(groups) + sign * amps * groups.reduce((sum, group) => sum + group.ohmicResistanceOhm, linkOhm)
-      );
-    },
+    clipVolts: (state, amps) => voltsOf(state).volts + sign * amps * moduleOhm,
     isNearEnd: (state, amps) => {
       if (tapers && amps < NEAR_END_AMPS * Math.abs(step.endAmps)) return true;
-      const rest = joined
-        ? voltsAtSoc(model.curve, joinedSoc(model, state, step))
-        : step.groupIndexes.reduce((sum, group) => sum + voltsAtSoc(model.curve, state.soc[group]!), 0);
-      return sign * (aimVolts - rest) < NEAR_END_VOLTS * count;
+      return sign * (aimVolts - voltsOf(state).restVolts) < NEAR_END_VOLTS * count;
     },
     atSetVolts: (terminalVolts, amps) =>
       source.setVolts !== null &&
@@ -160,8 +176,7 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
           Math.max(channel.displayStepVolts, 0.002 * (joined ? 1 : step.groupIndexes.length)),
     driveInTaper: (state, amps) => {
       if (!tapers) return { maxAmps: amps, setShiftVolts: 0, seenInTaper: false };
-      const groups = groupsOf(state);
-      const needed = electromotive(groups) + sign * amps * totalOhm(groups);
+      const needed = voltsOf(state).volts + sign * amps * totalOhm;
       return {
         maxAmps: null,
         setShiftVolts: source.setVolts === null ? 0 : needed - source.setVolts,
@@ -171,29 +186,24 @@ export function seriesLane(model: PlanModel, step: PlannedStep, index: number, c
   };
 }
 
-/** Over-voltage after a current that goes straight from one value to another: the RC branch in closed form. */
-function overAfter(group: CellGroup, fromAmps: number, toAmps: number, seconds: number): number {
+/**
+ * Over-voltage after a current that goes straight from one value to another: the RC branch in closed form.
+ *
+ * @param decay e^(−t/τ) of those seconds
+ */
+function overAfter(
+  group: CellGroup,
+  over: number,
+  fromAmps: number,
+  toAmps: number,
+  seconds: number,
+  decay: number,
+): number {
   const { polarisationResistanceOhm: ohm, polarisationTimeConstantS: tau } = group;
   if (!(tau > 0)) return 0;
   const slope = (toAmps - fromAmps) / seconds;
-  const decay = Math.exp(-seconds / tau);
   const lag = ohm * slope * tau;
-  return ((group.polarisationVolts ?? 0) - ohm * fromAmps + lag) * decay + ohm * toAmps - lag;
-}
-
-/** Groups that are joined share their charge. */
-function joinedSoc(model: PlanModel, state: ModuleState, step: PlannedStep): number {
-  let charge = 0;
-  let capacity = 0;
-  for (const group of step.groupIndexes) {
-    charge += state.soc[group]! * model.groups[group]!.capacityAh;
-    capacity += model.groups[group]!.capacityAh;
-  }
-  return charge / capacity;
-}
-
-function meanOver(state: ModuleState, step: PlannedStep): number {
-  return step.groupIndexes.reduce((sum, group) => sum + state.over[group]!, 0) / step.groupIndexes.length;
+  return (over - ohm * fromAmps + lag) * decay + ohm * toAmps - lag;
 }
 
 /** A step that was planned to end in a taper and not in constant current. */

@@ -1,5 +1,5 @@
 import type { Direction } from '../types';
-import { voltsAtSoc } from '../curve/ocv';
+import { curveVolts, voltsAtSoc } from '../curve/ocv';
 import type { PlanModel } from './plan-model';
 import { ampHoursToFirst, stringCharge, stringVolts, type StringCharge } from './string-charge';
 
@@ -67,13 +67,14 @@ function aimAt(model: PlanModel, string: StringCharge, kind: Aim['kind'], ampHou
 
 /** Ampere-hours at which the highest group is as far over the target as the lowest is under it. */
 function middleAmpHours(model: PlanModel, string: StringCharge): number {
-  const needs = string.alike.map(({ soc, socPerAmpHour: step }) => (model.targetSoc - soc) / step);
+  const { curve, soc, socPerAmpHour: steps } = string;
+  const needs = soc.map((at, group) => (model.targetSoc - at) / steps[group]!);
   let low = Math.max(0, Math.min(...needs));
   let high = Math.max(0, ...needs);
-  const sign = Math.sign(string.alike[0]!.socPerAmpHour);
+  const sign = Math.sign(steps[0]!);
   for (let pass = 0; pass < 60; pass += 1) {
     const middle = (low + high) / 2;
-    const volts = string.alike.map(({ soc, socPerAmpHour: step }) => voltsAtSoc(string.curve, soc + step * middle));
+    const volts = soc.map((at, group) => curveVolts(curve, at + steps[group]! * middle));
     const centre = (Math.max(...volts) + Math.min(...volts)) / 2;
     if ((centre - model.targetVolts) * sign > 0) high = middle;
     else low = middle;

@@ -7,6 +7,8 @@ import { findRoot } from '../step/find-root';
 export interface CurrentLaw {
   /** Summed open-circuit volts after so many ampere-hours at the terminals. */
   openVolts: (ampHours: number) => number;
+  /** The ampere-hours at which that is so many volts, where it is known beforehand. */
+  ampHoursTo?: (openVolts: number) => number;
   /** +1 charging, −1 discharging. */
   sign: 1 | -1;
   maxAmps: number;
@@ -61,7 +63,7 @@ export function currentSeconds(law: CurrentLaw, ampHours: number): number {
   const last = ampsAfter(law, ampHours);
   const first = ampsAfter(law, 0);
   if (first === last && last === law.maxAmps) return (3600 * ampHours) / last;
-  const from = first === law.maxAmps ? endOfConstantCurrent(law, ampHours) : 0;
+  const from = first === law.maxAmps ? endOfConstantCurrent(law, ampHours, last) : 0;
   let seconds = (3600 * from) / law.maxAmps;
   let before = from === 0 ? first : law.maxAmps;
   let at = from;
@@ -84,7 +86,11 @@ function meanAmps(first: number, second: number): number {
 }
 
 /** Ampere-hours at which the current begins to fall: the currents are monotone over a charge. */
-function endOfConstantCurrent(law: CurrentLaw, ampHours: number): number {
+function endOfConstantCurrent(law: CurrentLaw, ampHours: number, lastAmps: number): number {
+  if (law.ampHoursTo !== undefined && law.setVolts !== null && law.maxWatts === null && law.loadOhm === null)
+    return lastAmps === law.maxAmps
+      ? ampHours
+      : Math.min(ampHours, law.ampHoursTo(law.setVolts - law.sign * law.maxAmps * law.resistanceOhm));
   const over = (at: number): number => limitedAmps(law, at) - law.maxAmps;
   const last = over(ampHours);
   return last >= 0 ? ampHours : findRoot(over, 0, over(0), ampHours, last, CLOSE_SHARE * ampHours);

@@ -13,7 +13,10 @@ const LEAST_SAMPLES = 16;
  * each slope stands for itself); what the slopes of one doubt explain is taken off the times, and the 10 to 90 % width of what
  * remains is compared.
  */
-export function dominantDoubt(samples: Sample[], seconds: readonly number[]): { dominant: Doubt; narrowsByS: number } {
+export function dominantDoubt(
+  samples: readonly Sample[],
+  seconds: readonly number[],
+): { dominant: Doubt; narrowsByS: number } {
   const count = samples.length;
   if (count < LEAST_SAMPLES) return { dominant: 'capacity', narrowsByS: 0 };
   const meanS = mean(seconds);

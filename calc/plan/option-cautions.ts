@@ -22,17 +22,8 @@ export function optionCautions(model: PlanModel, draft: Draft, option: PlanOptio
   if (draft.busbarsOff)
     add('busbars-off', 'Busbars come off. Open groups have no fuse between them: insulated tools, one pole at a time.');
 
-  if (!option.withinTolerance) {
-    const worst = worstGroup(model, option.endGroupVolts);
-    add(
-      'ends-apart',
-      `${groupText(worst)} ends ${millivoltsText(option.endGroupVolts[worst]! - model.targetVolts)} ${option.endGroupVolts[worst]! < model.targetVolts ? 'under' : 'over'} the target, outside.`,
-    );
-  } else if (option.endSpreadVolts > model.toleranceVolts)
-    add(
-      'ends-apart',
-      `Ends ${millivoltsText(option.endSpreadVolts)} apart, just inside ±${millivoltsText(model.toleranceVolts)}.`,
-    );
+  const apart = endsApart(model, draft, option);
+  if (apart !== null) add('ends-apart', apart.text);
 
   const share = draft.way === 'paralleled' ? count : 1;
   const limitC = workshop.rateLimitC ?? RATE_LIMIT_C;
@@ -84,6 +75,30 @@ export function optionCautions(model: PlanModel, draft: Draft, option: PlanOptio
       );
   }
   return found;
+}
+
+/** That groups end outside the tolerance or far apart inside it, in the draft's own words where it has some; null: they do not. */
+export function endsApart(
+  model: PlanModel,
+  draft: Draft,
+  {
+    withinTolerance,
+    endGroupVolts,
+    endSpreadVolts,
+  }: Pick<PlanOption, 'withinTolerance' | 'endGroupVolts' | 'endSpreadVolts'>,
+): Caution | null {
+  const code = 'ends-apart';
+  const own = draft.cautions.find((caution) => caution.code === code);
+  if (own) return own;
+  if (!withinTolerance) {
+    const worst = worstGroup(model, endGroupVolts);
+    const side = endGroupVolts[worst]! < model.targetVolts ? 'under' : 'over';
+    const off = millivoltsText(endGroupVolts[worst]! - model.targetVolts);
+    return { code, text: `${groupText(worst)} ends ${off} ${side} the target, outside.` };
+  }
+  if (endSpreadVolts <= model.toleranceVolts) return null;
+  const inside = millivoltsText(model.toleranceVolts);
+  return { code, text: `Ends ${millivoltsText(endSpreadVolts)} apart, just inside ±${inside}.` };
 }
 
 function worstGroup(model: PlanModel, endGroupVolts: number[]): number {

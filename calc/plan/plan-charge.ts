@@ -145,7 +145,7 @@ function fromEnds(model: PlanModel, take: Take): void {
 /** A bare voltage target on the plateau that nobody has accepted the band of. */
 function refusePlateau(plan: ChargePlan, model: PlanModel): void {
   const { totalS } = plan.options[0]!;
-  const ends = model.samples.map((sample) => Math.min(1, Math.max(0, sample.targetSoc)));
+  const ends = model.samples().map((sample) => Math.min(1, Math.max(0, sample.targetSoc)));
   const soc = { p10: quantile(ends, 0.1), p50: quantile(ends, 0.5), p90: quantile(ends, 0.9) };
   const percent = (share: number): string => `${Math.round(share * 100)}\u00a0%`;
   plan.refusals.push({

@@ -44,7 +44,9 @@ export interface PlanModel {
   /** What on the mark may stay short of the target, V per group. */
   markVolts: number;
   nominal: Sample;
-  samples: Sample[];
+  /** Drawn when they are first asked for: a charge that was read has samples of its own. */
+  samples: () => readonly Sample[];
+  sampleCount: number;
   /** What the samples were drawn about. */
   basis: SampleBasis;
   spreads: Spreads;
@@ -79,6 +81,8 @@ export function planModel(input: PlanInput): PlanModel {
     spreads,
   };
   const sum = startVolts.reduce((total, volts) => total + volts, 0);
+  const sampleCount = input.samples ?? DEFAULT_SAMPLES;
+  let drawn: Sample[] | null = null;
   return {
     input,
     curve,
@@ -99,7 +103,8 @@ export function planModel(input: PlanInput): PlanModel {
     settledVolts: (groupCount) => groupCount * target.toleranceVolts * SETTLED_SHARE,
     markVolts: target.toleranceVolts * ON_THE_MARK_SHARE,
     nominal: drawSamples(basis, 1, input.seed)[0]!,
-    samples: drawSamples(basis, input.samples ?? DEFAULT_SAMPLES, input.seed),
+    samples: () => (drawn ??= drawSamples(basis, sampleCount, input.seed)),
+    sampleCount,
     basis,
     spreads,
   };

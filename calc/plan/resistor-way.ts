@@ -156,7 +156,7 @@ function sampleRun(
 ): (sample: Sample) => { seconds: number; ampHours: number } {
   const all = model.groups.map((_, group) => group);
   const stringIn = sampleString(model, all, model.direction, () => 0);
-  const known = new WeakMap<Sample, { seconds: number; ampHours: number }>();
+  const known = new Map<Sample, { seconds: number; ampHours: number }>();
   return (sample) => {
     const before = known.get(sample);
     if (before) return before;

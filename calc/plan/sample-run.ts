@@ -42,7 +42,7 @@ export type SampleRun = (sample: Sample) => { seconds: number; ampHours: number 
  */
 export function sampleRun(input: SampleRunInput): SampleRun {
   const { source, sign, count, aimVolts, endAmps } = input;
-  const known = new WeakMap<Sample, { seconds: number; ampHours: number }>();
+  const known = new Map<Sample, { seconds: number; ampHours: number }>();
   return (sample) => {
     const before = known.get(sample);
     if (before) return before;
@@ -55,6 +55,7 @@ export function sampleRun(input: SampleRunInput): SampleRun {
     const startAmps = input.startAmps ?? null;
     const law: CurrentLaw = {
       openVolts: (ampHours) => stringVolts(string, ampHours),
+      ampHoursTo: (volts) => ampHoursToVolts(string, volts),
       sign,
       maxAmps: (source.maxAmps ?? Infinity) * sample.currentFactor ** (input.currentWidening ?? 1),
       setVolts: startAmps === null ? asSet : stringVolts(string, 0) + sign * startAmps * resistanceOhm,

@@ -1,7 +1,8 @@
+import { compileCurve } from '../curve/compiled-curve';
 import { voltsAtSoc } from '../curve/ocv';
 import type { OcvTable } from '../types';
 import type { Doubt, Spreads } from '../plan-types';
-import { socOf } from './soc-of';
+import { socOf, socOfCurve } from './soc-of';
 import { resistanceTemperatureFactor } from '../resistance/temperature-factor';
 import { inverseNormal } from '../statistics/inverse-normal';
 import { latinHypercube, latinHypercubeNormal } from '../statistics/latin-hypercube';
@@ -106,23 +107,54 @@ export function drawSamples(basis: SampleBasis, count: number, seed: number): Sa
 export const SAMPLE_AXES: readonly Axis[] = AXES;
 const PLACE = Object.fromEntries(AXES.map((axis, at) => [axis, at])) as Record<Axis, number>;
 
+/** Capacity of one set of draws over the nominal one. The draws begin at `from`, in the order of `SAMPLE_AXES`. */
+export const capacityFactor = ({ spreads }: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  Math.exp(spreads.capacityRelative * draws[from + PLACE.capacity]!);
+
+/** Resistance over the nominal one. */
+export function resistanceFactor({ spreads, celsius }: SampleBasis, draws: ArrayLike<number>, from = 0): number {
+  const own = Math.min(119, Math.max(-59, celsius + spreads.temperatureCelsius * draws[from + PLACE.temperature]!));
+  return (
+    Math.exp(spreads.resistanceRelative * draws[from + PLACE.resistance]!) *
+    (resistanceTemperatureFactor(own) / resistanceTemperatureFactor(celsius))
+  );
+}
+
+/** Current of a source over what it is set to. */
+export const currentFactor = ({ spreads }: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  Math.exp(spreads.currentRelative * draws[from + PLACE.current]!);
+
+/** What any true voltage is more on the curve, V per group. */
+export const curveShiftVolts = ({ spreads }: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  -spreads.curveVolts * draws[from + PLACE.curve]!;
+
+/** What a rest voltage of the spare's meter is more on the curve, V per group. */
+export const spareShiftVolts = (basis: SampleBasis, draws: ArrayLike<number>, from = 0): number =>
+  curveShiftVolts(basis, draws, from) +
+  basis.spreads.meterVolts * draws[from + PLACE['spare-meter']]! +
+  (basis.spreads.readingVolts * draws[from + PLACE['spare-scatter']]!) / Math.sqrt(basis.readVolts.length) +
+  hysteresisOf(basis.spreads, draws[from + PLACE['spare-hysteresis']]!);
+
+/** Where each group of the spare stands at the clip-on, into a list. */
+export function startSocs(basis: SampleBasis, draws: ArrayLike<number>, from: number, into: number[]): number[] {
+  const { curve, readVolts, spreads } = basis;
+  const ready = compileCurve(curve);
+  const shift = spareShiftVolts(basis, draws, from);
+  const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * draws[from + PLACE['self-discharge']]!);
+  for (let group = 0; group < readVolts.length; group += 1) {
+    const volts = readVolts[group]!;
+    // Groups read alike stand alike.
+    const alike = group > 0 && volts === readVolts[group - 1]!;
+    into[group] = alike ? into[group - 1]! : socOfCurve(ready, volts + shift) - lost;
+  }
+  return into;
+}
+
 /** The module of one set of standard normal draws, in the order of `SAMPLE_AXES`. */
 export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
   const { spreads, curve } = basis;
-  const count = basis.readVolts.length;
-  const capacityFactor = Math.exp(spreads.capacityRelative * draws[PLACE.capacity]!);
-  const celsius = Math.min(119, Math.max(-59, basis.celsius + spreads.temperatureCelsius * draws[PLACE.temperature]!));
-  const resistanceFactor =
-    Math.exp(spreads.resistanceRelative * draws[PLACE.resistance]!) *
-    (resistanceTemperatureFactor(celsius) / resistanceTemperatureFactor(basis.celsius));
-  const curveShift = -spreads.curveVolts * draws[PLACE.curve]!;
-  const spareMeter = spreads.meterVolts * draws[PLACE['spare-meter']]!;
-  const targetMeter = basis.sameMeter ? spareMeter : spreads.meterVolts * draws[PLACE['target-meter']]!;
-  const spareShift =
-    curveShift +
-    spareMeter +
-    (spreads.readingVolts * draws[PLACE['spare-scatter']]!) / Math.sqrt(count) +
-    hysteresisOf(spreads, draws[PLACE['spare-hysteresis']]!);
+  const curveShift = curveShiftVolts(basis, draws);
+  const targetMeter = spreads.meterVolts * draws[PLACE[basis.sameMeter ? 'spare-meter' : 'target-meter']]!;
   const targetScatter = draws[PLACE['target-scatter']]!;
   const bySoc = basis.targetSoc ?? null;
   const ownTargetSoc = bySoc === null ? null : bySoc.soc + bySoc.sd * targetScatter;
@@ -133,32 +165,24 @@ export function sampleOf(basis: SampleBasis, draws: number[]): Sample {
         targetMeter +
         spreads.targetVolts * targetScatter +
         hysteresisOf(spreads, draws[PLACE['target-hysteresis']]!);
-  const lost = basis.lostSoc * Math.exp(spreads.selfDischargeRelative * draws[PLACE['self-discharge']]!);
-  const startSoc = new Array<number>(count);
-  const capacityAh = new Array<number>(count);
-  const longOhm = new Array<number>(count);
-  for (let group = 0; group < count; group += 1) {
-    const volts = basis.readVolts[group]!;
-    // Groups read alike stand alike.
-    startSoc[group] =
-      group > 0 && volts === basis.readVolts[group - 1]!
-        ? startSoc[group - 1]!
-        : socOf(curve, volts + spareShift) - lost;
-    capacityAh[group] = basis.capacityAh[group]! * capacityFactor;
-    longOhm[group] = basis.longOhm[group]! * resistanceFactor;
-  }
   return {
-    startSoc,
+    startSoc: startSocs(basis, draws, 0, []),
     targetSoc: ownTargetSoc ?? socOf(curve, basis.targetVolts + targetShiftVolts),
-    capacityAh,
-    longOhm,
-    currentFactor: Math.exp(spreads.currentRelative * draws[PLACE.current]!),
-    spareShiftVolts: spareShift,
+    capacityAh: times(basis.capacityAh, capacityFactor(basis, draws)),
+    longOhm: times(basis.longOhm, resistanceFactor(basis, draws)),
+    currentFactor: currentFactor(basis, draws),
+    spareShiftVolts: spareShiftVolts(basis, draws),
     targetShiftVolts,
     curveShiftVolts: curveShift,
     chargerDraw: draws[PLACE['charger-meter']]!,
     draws,
   };
+}
+
+function times(values: readonly number[], factor: number): number[] {
+  const result: number[] = [];
+  for (let at = 0; at < values.length; at += 1) result.push(values[at]! * factor);
+  return result;
 }
 
 const hysteresisOf = ({ hysteresisVolts }: Spreads, draw: number): number =>

@@ -180,15 +180,16 @@ export function sampleString(
   movedAmpHours: (sample: Sample, group: number) => number,
 ): SeriesStepInput['stringIn'] {
   return (sample) => {
-    const perAmpHour = groupIndexes.map((group) =>
-      direction === 'charge' ? model.efficiency / sample.capacityAh[group]! : -1 / sample.capacityAh[group]!,
-    );
-    const soc = groupIndexes.map((group) => {
+    const perAmpHour: number[] = [];
+    const soc: number[] = [];
+    let ohm = 0;
+    for (const group of groupIndexes) {
+      const capacity = sample.capacityAh[group]!;
       const moved = movedAmpHours(sample, group);
-      const share = moved > 0 ? moved * model.efficiency : moved;
-      return sample.startSoc[group]! + share / sample.capacityAh[group]!;
-    });
-    const ohm = groupIndexes.reduce((sum, group) => sum + sample.longOhm[group]!, 0);
+      perAmpHour.push(direction === 'charge' ? model.efficiency / capacity : -1 / capacity);
+      soc.push(sample.startSoc[group]! + (moved > 0 ? moved * model.efficiency : moved) / capacity);
+      ohm += sample.longOhm[group]!;
+    }
     return { string: stringCharge(model.curve, soc, perAmpHour), ohm };
   };
 }

@@ -6,11 +6,18 @@ import { planModel, type PlanModel } from './plan-model';
 import { refuseCharge } from './refuse-charge';
 import { withTargetVolts } from './target-soc';
 import { terminalsWay } from './terminals-way';
-import { toOption } from './to-option';
+import { endsApart } from './option-cautions';
+import { channelIdsOf, optionTotals } from './to-option';
+
+/** Of the soonest way what a list shows of it. */
+export interface SoonestWay extends Pick<PlanOption, 'channelIds' | 'totalS'> {
+  /** That its groups end outside the tolerance, or far apart inside it; null: they do not. */
+  apart: Caution | null;
+}
 
 export interface SoonestTerminals {
   /** Null: it cannot be done, or nothing is to be charged. */
-  option: PlanOption | null;
+  option: SoonestWay | null;
   /** Each group rests within the tolerance already. */
   alreadyWithin: boolean;
   refusals: Refusal[];
@@ -36,12 +43,18 @@ export function soonestTerminals(asked: PlanInput): SoonestTerminals {
     return { option: null, alreadyWithin: true, refusals, reason: null, cautions };
   const { draft, reason } = soonestDraft(model);
   return {
-    option: draft === null ? null : toOption(model, draft),
+    option: draft === null ? null : soonestWay(model, draft),
     alreadyWithin: false,
     refusals,
     reason: draft === null ? reason : null,
     cautions,
   };
+}
+
+/** Neither curve of the current nor sentences beside: a list of 200 spares has no time for them. */
+function soonestWay(model: PlanModel, draft: Draft): SoonestWay {
+  const totals = optionTotals(model, draft);
+  return { channelIds: channelIdsOf(draft), totalS: totals.totalS, apart: endsApart(model, draft, totals) };
 }
 
 type DraftOn = (channel: ChannelParameters) => Draft | NotPossible;

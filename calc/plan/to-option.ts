@@ -11,8 +11,8 @@ import { timeFactorOf, timeFactorText, withTimeFactor } from './time-factor';
 import { toTrace } from './to-trace';
 import { ampsText } from './words';
 
-/** Puts a draft on the clock and gives it its band. */
-export function toOption(model: PlanModel, draft: Draft): PlanOption {
+/** When a draft is ready, with its band, and where its groups end: all that a list of many spares asks. */
+export function optionTotals(model: PlanModel, draft: Draft) {
   const { input } = model;
   const { steps } = draft;
   const endSoc = steps.length === 0 ? model.startSoc : steps[steps.length - 1]!.socAfter;
@@ -27,12 +27,29 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
   };
   clockInput.restS = Math.max(clockInput.restS, settleAfterEnd(steps, layOut(clockInput)));
   const clock = layOut(clockInput);
-  const reckoned = model.samples.map((sample) => steps.map((step) => step.secondsIn(sample)));
+  const reckoned = model.samples().map((sample) => steps.map((step) => step.secondsIn(sample)));
   const factor = timeFactorOf(input, steps);
   const sampled = factor === null ? reckoned : withTimeFactor(reckoned, factor);
   const ready = sampled.map((seconds) => layOut({ ...clockInput, seconds }).readyS);
   const totalS: Band = { p10: quantile(ready, 0.1), p50: quantile(ready, 0.5), p90: quantile(ready, 0.9) };
-  const doubt = dominantDoubt(model.samples, ready);
+  return { clockInput, clock, factor, sampled, ready, totalS, endGroupVolts, ...endsOf(model, endGroupVolts) };
+}
+
+/** How far apart the groups end, and whether each is inside the tolerance. */
+function endsOf(model: PlanModel, endGroupVolts: number[]) {
+  return {
+    endSpreadVolts: Math.max(...endGroupVolts) - Math.min(...endGroupVolts),
+    withinTolerance: endGroupVolts.every((volts) => Math.abs(volts - model.targetVolts) <= model.toleranceVolts + 1e-5),
+  };
+}
+
+/** Puts a draft on the clock and gives it its band. */
+export function toOption(model: PlanModel, draft: Draft): PlanOption {
+  const { input } = model;
+  const { steps } = draft;
+  const totals = optionTotals(model, draft);
+  const { clockInput, clock, factor, sampled, totalS, endGroupVolts, endSpreadVolts, withinTolerance } = totals;
+  const doubt = dominantDoubt(model.samples(), totals.ready);
   const likely = likelyInput(clockInput, clock, totalS.p50);
 
   const latestStartS = input.readyByS === null ? null : input.readyByS - (totalS.p90 - clock.queueS);
@@ -41,7 +58,7 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
     way: draft.way,
     finish: draft.finish,
     direction: draft.direction,
-    channelIds: [...new Set(steps.flatMap((step) => (step.channel ? [step.channel.channelId] : [])))],
+    channelIds: channelIdsOf(draft),
     channelText: channelText(model, draft),
     amps: draft.amps,
     steps: steps.map((step, at) => toPlannedStep(model, step, clock, at)),
@@ -56,9 +73,9 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
     handsOnS: clock.handsOnS,
     busbarsOff: draft.busbarsOff,
     takes: draft.takes,
-    endSpreadVolts: Math.max(...endGroupVolts) - Math.min(...endGroupVolts),
+    endSpreadVolts,
     endGroupVolts,
-    withinTolerance: endGroupVolts.every((volts) => Math.abs(volts - model.targetVolts) <= model.toleranceVolts + 1e-5),
+    withinTolerance,
     setVolts: draft.setVolts,
     setVoltsCap: draft.setVoltsCap,
     restS: clockInput.restS,
@@ -76,9 +93,14 @@ export function toOption(model: PlanModel, draft: Draft): PlanOption {
   return option;
 }
 
+/** In the order in which they are clipped on. */
+export const channelIdsOf = ({ steps }: Draft): string[] => [
+  ...new Set(steps.flatMap((step) => (step.channel ? [step.channel.channelId] : []))),
+];
+
 function knownEndOf(model: PlanModel, { knownEnd, endSocIn }: Draft): Pick<PlanOption, 'knownEnd' | 'endSoc'> {
   if (knownEnd === undefined || endSocIn === undefined) return {};
-  const ends = model.samples.map(endSocIn);
+  const ends = model.samples().map(endSocIn);
   return {
     knownEnd,
     endSoc: { p10: quantile(ends, 0.1), p50: quantile(ends, 0.5), p90: quantile(ends, 0.9) },

@@ -1,10 +1,12 @@
-// `npm run backup [-- folder]`: a copy of the database while the server runs, into data/backups or the folder named.
+// `npm run backup [-- folder]`: a copy of the database and its photos while the server runs, into data/backups or the
+// folder named.
 import fs from 'node:fs';
 import path from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { backUp } from '../back-up';
+import { backUpPhotos } from '../back-up-photos';
 import { readConfig } from '../config';
-import { backupFolder, databaseFile } from '../data-files';
+import { backupFolder, databaseFile, photoFolder } from '../data-files';
 
 async function main(): Promise<void> {
   const { dataDir } = readConfig({ BIDEWELL_DATA: process.env.BIDEWELL_DATA });
@@ -12,9 +14,15 @@ async function main(): Promise<void> {
   const file = await backUp(databaseFile(dataDir), folder, new Date());
   const mebibytes = (fs.statSync(file).size / 1024 / 1024).toFixed(1);
   console.log(`bidewell: ${file} (${mebibytes} MiB, checked)`);
+  const photos = path.join(folder, 'photos');
+  const { there, copied, missing } = backUpPhotos(file, photoFolder(dataDir), photos);
+  if (there > 0) console.log(`bidewell: ${photos} (${there} photos of that copy, ${copied} of them new)`);
   console.log(
-    'bidewell: to restore, stop the server, remove bidewell.sqlite, -wal and -shm from the data folder, and put this copy there as bidewell.sqlite',
+    'bidewell: to restore, stop the server, remove bidewell.sqlite, -wal and -shm from the data folder, put this copy there as bidewell.sqlite, and the folder photos beside it',
   );
+  // Said last, so that it is not missed; the database is copied all the same.
+  if (missing.length > 0)
+    throw new Error(`These photos are gone or damaged and are in no copy: ${missing.join(', ')}.`);
 }
 
 if (import.meta.url === pathToFileURL(process.argv[1] ?? '').href) {

@@ -9,6 +9,7 @@ import { Spare } from '../entities/spare';
 import { updateCharge } from '../repositories/charges.repository';
 import { recordRemoved } from '../services/finish-repair.service';
 import { addPackReading } from '../services/pack-readings.service';
+import { packColumnsOf } from '../services/pack-rules';
 import { loadRepairFile } from '../services/repair-file';
 import { takeTarget } from '../services/repair-targets.service';
 import { settleRepair } from '../services/repair-write';
@@ -43,7 +44,7 @@ export async function writePackTypes(manager: EntityManager, setUpAt: number): P
     id: packTypeId(type),
     workshopId,
     name: packs[type].name,
-    ...packOf(type),
+    ...packColumnsOf(packOf(type)),
     note: null,
     rev: 1,
     createdAt: setUpAt,

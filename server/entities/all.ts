@@ -1,4 +1,5 @@
 /** All entities, listed: globs break in a bundle. */
+import { AdvisedItem } from './advised-item';
 import { Alert } from './alert';
 import { Channel } from './channel';
 import { ChannelHold } from './channel-hold';
@@ -7,6 +8,7 @@ import { ChargeEvent } from './charge-event';
 import { ChargeReading } from './charge-reading';
 import { Charger } from './charger';
 import { CheckAnswer } from './check-answer';
+import { FittedSpare } from './fitted-spare';
 import { IdempotencyKey } from './idempotency-key';
 import { Invitation } from './invitation';
 import { LevellingResistor } from './levelling-resistor';
@@ -16,6 +18,7 @@ import { ModuleType } from './module-type';
 import { PackReading } from './pack-reading';
 import { PackType } from './pack-type';
 import { Person } from './person';
+import { Photo } from './photo';
 import { RemovedModule } from './removed-module';
 import { Repair } from './repair';
 import { RepairEvent } from './repair-event';
@@ -60,9 +63,12 @@ export const entities = [
   PackReading,
   SecondSource,
   RemovedModule,
+  Photo,
+  AdvisedItem,
   RepairWait,
   RepairEvent,
   Wall,
   WallCode,
+  FittedSpare,
   IdempotencyKey,
 ];

@@ -31,6 +31,12 @@ export class PackType {
   @Column(packColumns.positionOfGroup)
   positionOfGroup!: string[] | null;
 
+  @Column(packColumns.bleedAmps)
+  bleedAmps!: number | null;
+
+  @Column(packColumns.aimMillivolts)
+  aimMillivolts!: number | null;
+
   @Column(optionalTextColumn('note'))
   note!: string | null;
 

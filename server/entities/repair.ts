@@ -56,6 +56,12 @@ export class Repair {
   @Column(packColumns.positionOfGroup)
   positionOfGroup!: string[] | null;
 
+  @Column(packColumns.bleedAmps)
+  bleedAmps!: number | null;
+
+  @Column(packColumns.aimMillivolts)
+  aimMillivolts!: number | null;
+
   @Column(optionalTextColumn('customer_name'))
   customerName!: string | null;
 
@@ -115,6 +121,17 @@ export class Repair {
 
   @Column(optionalTextColumn('delete_reason'))
   deleteReason!: string | null;
+
+  /** When the customer's name and contact were erased. */
+  @Column(optionalInstantColumn('erased_at'))
+  erasedAt!: number | null;
+
+  /** A plain column: a foreign key cannot be added without building the table anew. */
+  @Column(optionalIdColumn('erased_by_id'))
+  erasedById!: string | null;
+
+  @Column(optionalTextColumn('erase_reason'))
+  eraseReason!: string | null;
 
   /** What a search looks in, in lower case: the databases agree on no case but of a–z. */
   @Column(textColumn('search_text'))

@@ -7,6 +7,11 @@ import { SpareCapacity1765000000000 } from './1765000000000-spare-capacity';
 import { Behaviours1765100000000 } from './1765100000000-behaviours';
 import { ReadingPlace1765200000000 } from './1765200000000-reading-place';
 import { Repairs1765300000000 } from './1765300000000-repairs';
+import { Advised1765500000000 } from './1765500000000-advised';
+import { Photos1765550000000 } from './1765550000000-photos';
+import { CustomerErased1765600000000 } from './1765600000000-customer-erased';
+import { PackBalance1765800000000 } from './1765800000000-pack-balance';
+import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
 
 export const migrations = [
   Initial1764600000000,
@@ -17,4 +22,9 @@ export const migrations = [
   Behaviours1765100000000,
   ReadingPlace1765200000000,
   Repairs1765300000000,
+  Advised1765500000000,
+  Photos1765550000000,
+  CustomerErased1765600000000,
+  PackBalance1765800000000,
+  FittedSpare1765810000000,
 ];

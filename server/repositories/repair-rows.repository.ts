@@ -1,6 +1,9 @@
 /** The rows that hang on repairs, for one repair or for a whole list at once. */
 import { In, IsNull, type EntityManager, type FindOptionsOrder, type ObjectLiteral } from 'typeorm';
+import { AdvisedItem } from '../entities/advised-item';
+import { FittedSpare } from '../entities/fitted-spare';
 import { PackReading } from '../entities/pack-reading';
+import { Photo } from '../entities/photo';
 import { RemovedModule } from '../entities/removed-module';
 import { RepairEvent } from '../entities/repair-event';
 import { RepairPerson } from '../entities/repair-person';
@@ -30,6 +33,10 @@ export const peopleOfRepairs = listing(RepairPerson, { place: 'ASC' });
 export const readingsOfRepairs = listing(PackReading, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 export const sourcesOfRepairs = listing(SecondSource, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 export const removedOfRepairs = listing(RemovedModule, { at: 'DESC', id: 'ASC' });
+export const fittedOfRepairs = listing(FittedSpare, { at: 'DESC', id: 'ASC' });
+export const photosOfRepairs = listing(Photo, { at: 'DESC', id: 'ASC' });
+/** The first advised comes first. */
+export const advisedOfRepairs = listing(AdvisedItem, { at: 'ASC', id: 'ASC' });
 export const waitsOfRepairs = listing(RepairWait, { fromAt: 'DESC', id: 'ASC' });
 export const eventsOfRepairs = listing(RepairEvent, { at: 'DESC', createdAt: 'DESC', id: 'ASC' });
 
@@ -69,6 +76,25 @@ export async function updateSecondSource(
 
 export async function insertRemovedModule(manager: EntityManager, removed: RemovedModule): Promise<void> {
   await manager.insert(RemovedModule, removed);
+}
+
+export async function insertFittedSpare(manager: EntityManager, fitted: FittedSpare): Promise<void> {
+  await manager.insert(FittedSpare, fitted);
+}
+
+export async function insertAdvised(manager: EntityManager, item: AdvisedItem): Promise<void> {
+  await manager.insert(AdvisedItem, item);
+}
+export async function updateAdvised(
+  manager: EntityManager,
+  workshopId: string,
+  id: string,
+  patch: Partial<AdvisedItem>,
+): Promise<void> {
+  await manager.update(AdvisedItem, { workshopId, id }, patch);
+}
+export async function deleteAdvised(manager: EntityManager, workshopId: string, id: string): Promise<void> {
+  await manager.delete(AdvisedItem, { workshopId, id });
 }
 
 export async function insertWait(manager: EntityManager, wait: RepairWait): Promise<void> {

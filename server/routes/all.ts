@@ -2,12 +2,15 @@
 import { alertsRoutes } from './alerts.routes';
 import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
+import { customersRoutes } from './customers.routes';
 import type { RoutesModule } from './define-route';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
 import { peopleRoutes } from './people.routes';
+import { photosRoutes } from './photos.routes';
 import { plansRoutes } from './plans.routes';
 import { repairsRoutes } from './repairs.routes';
+import { searchRoutes } from './search.routes';
 import { sessionRoutes } from './session.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
@@ -24,6 +27,9 @@ export const routesModules: RoutesModule[] = [
   stockRoutes,
   plansRoutes,
   repairsRoutes,
+  photosRoutes,
+  customersRoutes,
+  searchRoutes,
   chargesRoutes,
   boardRoutes,
   alertsRoutes,

@@ -16,16 +16,19 @@ import {
   startChargeSchema,
   stopSchema,
 } from '@/shared/contract/charge';
+import { paperQuerySchema } from '@/shared/contract/papers';
 import { keepPlanSchema } from '@/shared/contract/plan';
 import { correctReading, logReading } from '../services/charge-readings.service';
 import { charge, charges } from '../services/charges.service';
 import { checkAfterRest, fitCharge, handOver, shelveCharge } from '../services/finish-charge.service';
 import { keepPlan } from '../services/keep-plan.service';
+import { labelPaper } from '../services/label-paper.service';
 import { lookIn } from '../services/look-ins.service';
 import { answerCheck, dropCharge, queueCharge } from '../services/prepare-charge.service';
 import { currentOff, holdCharge, nextStep, resumeCharge, stopCharge } from '../services/run-charge.service';
 import { startCharge } from '../services/start-charge.service';
 import type { Policy, RoutesModule } from './define-route';
+import { sendPaper } from './send-paper';
 
 const read: Policy = { kind: 'capability', capability: 'board:read' };
 const plan: Policy = { kind: 'capability', capability: 'charge:plan' };
@@ -47,6 +50,18 @@ export const chargesRoutes: RoutesModule = (route) => {
     path: '/charges/:id',
     policy: read,
     handle: ({ deps, member, params, now }) => charge(deps, member, idOf(params), now),
+  });
+  route({
+    method: 'get',
+    path: '/charges/:id/label.pdf',
+    policy: read,
+    query: paperQuerySchema,
+    limit: 'papers',
+    handle: async ({ deps, member, params, query, request, response, now }) =>
+      sendPaper(
+        response,
+        await labelPaper(deps, member, idOf(params), query, `${request.protocol}://${request.host}`, now),
+      ),
   });
   route({
     method: 'post',

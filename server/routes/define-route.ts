@@ -6,6 +6,7 @@ import type { Request, RequestHandler, Response, Router } from 'express';
 import type * as z from 'zod/mini';
 import type { Capability } from '@/shared/contract/roles';
 import type { Deps, Member } from '../deps';
+import type { FileRule } from '../middleware/one-file';
 import type { AddressLimit } from '../services/limits';
 
 /** Who may: anybody; any member; a member with a capability; a paired wall. */
@@ -22,6 +23,8 @@ export interface RouteInput<Body, Query> {
   params: Record<string, string>;
   body: Body;
   query: Query;
+  /** The file that came along; empty where the route takes none. */
+  file: Buffer;
   /** Revision from If-Match; only where the route asks for it. */
   rev: number;
   now: number;
@@ -35,6 +38,8 @@ export interface RouteSpec<Body = undefined, Query = undefined> {
   policy: Policy;
   body?: z.ZodMiniType<Body>;
   query?: z.ZodMiniType<Query>;
+  /** The write carries one file as multipart/form-data, in place of a JSON body. */
+  file?: FileRule;
   /** The write carries an Idempotency-Key; the stored answer is given again for the same key. */
   idempotent?: boolean;
   /** The write carries If-Match with the row's revision. */
@@ -51,7 +56,7 @@ export interface RouteSpec<Body = undefined, Query = undefined> {
 export interface DeclaredHandler extends RequestHandler {
   policy?: Policy;
   /** What the route asks of a write, for the tests that walk the router. */
-  asks?: { ifMatch: boolean; idempotent: boolean; body: boolean; limit: AddressLimit | null };
+  asks?: { ifMatch: boolean; idempotent: boolean; body: boolean; file: boolean; limit: AddressLimit | null };
 }
 
 export type RouteRegistrar = <Body = undefined, Query = undefined>(spec: RouteSpec<Body, Query>) => void;

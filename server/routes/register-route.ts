@@ -1,9 +1,11 @@
+import { createHash } from 'node:crypto';
 import type { Request, Response, Router } from 'express';
 import { leastRoleWith } from '@/shared/contract/roles';
 import type { Deps, Member } from '../deps';
 import { DomainError, forbidden, invalid } from '../errors/domain-error';
 import { fieldsOf } from '../errors/zod-fields';
 import { cookieOf } from '../middleware/cookies';
+import { oneFile } from '../middleware/one-file';
 import { addressKey } from '../services/limits';
 import { checkKey, once, type Answer } from '../services/idempotency.service';
 import { may } from '../services/may';
@@ -56,6 +58,8 @@ function send(response: Response, answer: Answer): void {
 const paramsOf = (request: Request): Record<string, string> =>
   Object.fromEntries(Object.entries(request.params).map(([name, value]) => [name, String(value)]));
 
+const noFile = Buffer.alloc(0);
+
 function handlerOf(deps: Deps, spec: AnySpec): DeclaredHandler {
   const handler: DeclaredHandler = async (request, response) => {
     const now = deps.clock.now();
@@ -65,6 +69,7 @@ function handlerOf(deps: Deps, spec: AnySpec): DeclaredHandler {
     const rev = spec.ifMatch ? revisionOf(request.get('if-match')) : 0;
     const body = parsed(spec.body, request.body ?? {});
     const query = parsed(spec.query, request.query);
+    const file = spec.file ? await oneFile(request, response, spec.file) : noFile;
     const work = async (): Promise<Answer> => {
       const result = await spec.handle({
         deps,
@@ -74,6 +79,7 @@ function handlerOf(deps: Deps, spec: AnySpec): DeclaredHandler {
         params: paramsOf(request),
         body,
         query,
+        file,
         rev,
         now,
         request,
@@ -86,13 +92,15 @@ function handlerOf(deps: Deps, spec: AnySpec): DeclaredHandler {
       return;
     }
     const route = `${request.method} ${request.path}`;
-    send(response, await once(deps, member, { key, route, content: { body, rev } }, now, work));
+    const content = spec.file ? { rev, file: createHash('sha256').update(file).digest('hex') } : { body, rev };
+    send(response, await once(deps, member, { key, route, content }, now, work));
   };
   handler.policy = spec.policy;
   handler.asks = {
     ifMatch: spec.ifMatch === true,
     idempotent: spec.idempotent === true,
     body: spec.body !== undefined,
+    file: spec.file !== undefined,
     limit: spec.limit ?? null,
   };
   return handler;

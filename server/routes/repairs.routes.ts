@@ -1,3 +1,4 @@
+import { pipeline } from 'node:stream/promises';
 import { packTypeSchema } from '@/shared/contract/pack';
 import {
   decideSourceSchema,
@@ -6,17 +7,21 @@ import {
   setReadingAsideSchema,
   takeTargetSchema,
 } from '@/shared/contract/pack-reading';
+import { paperQuerySchema } from '@/shared/contract/papers';
 import {
+  advisedSchema,
   archiveRepairSchema,
   changeRepairSchema,
   correctWaitSchema,
   deleteRepairSchema,
+  fitAsItIsSchema,
   handOverRepairSchema,
   removedModuleSchema,
   repairSchema,
   repairsQuerySchema,
   reserveSpareSchema,
 } from '@/shared/contract/repair';
+import { addAdvised, changeAdvised, removeAdvised } from '../services/advised.service';
 import { candidates } from '../services/candidates.service';
 import { correctWait } from '../services/correct-wait.service';
 import {
@@ -26,18 +31,23 @@ import {
   recordRemoved,
   restoreRepair,
 } from '../services/finish-repair.service';
+import { handOverPaper } from '../services/hand-over-paper.service';
 import { addPackReading, setReadingAside } from '../services/pack-readings.service';
 import { addPackType, changePackType, packTypes } from '../services/pack-types.service';
+import { fitAsItIs } from '../services/repair-fits.service';
 import { freeSpare, reserveSpare } from '../services/repair-spares.service';
 import { takeTarget } from '../services/repair-targets.service';
+import { repairsCsv } from '../services/repairs-csv.service';
 import { addRepair, changeBooked, repair, repairs } from '../services/repairs.service';
 import { addSecondSource, decideSource } from '../services/second-sources.service';
 import type { Policy, RoutesModule } from './define-route';
+import { sendPaper } from './send-paper';
 
 const read: Policy = { kind: 'capability', capability: 'repair:read' };
 const write: Policy = { kind: 'capability', capability: 'repair:write' };
 const decide: Policy = { kind: 'capability', capability: 'repair:decide' };
 const remove: Policy = { kind: 'capability', capability: 'repair:delete' };
+const exporting: Policy = { kind: 'capability', capability: 'repair:export' };
 const equipment: Policy = { kind: 'capability', capability: 'equipment:write' };
 
 const idOf = (params: Record<string, string>): string => params.id ?? '';
@@ -71,6 +81,17 @@ export const repairsRoutes: RoutesModule = (route) => {
     policy: read,
     query: repairsQuerySchema,
     handle: ({ deps, member, query, now }) => repairs(deps, member, query, now),
+  });
+  route({
+    method: 'get',
+    path: '/repairs.csv',
+    policy: exporting,
+    query: repairsQuerySchema,
+    handle: async ({ deps, member, query, now, response }) => {
+      const file = await repairsCsv(deps, member, query, now);
+      response.attachment(file.name).type('text/csv; charset=utf-8');
+      await pipeline(file.lines, response);
+    },
   });
   route({
     method: 'post',
@@ -158,11 +179,53 @@ export const repairsRoutes: RoutesModule = (route) => {
   });
   route({
     method: 'post',
+    path: '/repairs/:id/fit',
+    policy: write,
+    body: fitAsItIsSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) => fitAsItIs(deps, member, idOf(params), rev, body, now),
+  });
+  route({
+    method: 'post',
     path: '/repairs/:id/removed',
     policy: write,
     body: removedModuleSchema,
     status: 201,
     handle: ({ deps, member, params, body, now }) => recordRemoved(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'post',
+    path: '/repairs/:id/advised',
+    policy: write,
+    body: advisedSchema,
+    status: 201,
+    handle: ({ deps, member, params, body, now }) => addAdvised(deps, member, idOf(params), body, now),
+  });
+  route({
+    method: 'patch',
+    path: '/repairs/:id/advised/:itemId',
+    policy: write,
+    body: advisedSchema,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, body, now }) =>
+      changeAdvised(deps, member, { repairId: idOf(params), itemId: params.itemId ?? '' }, rev, body, now),
+  });
+  route({
+    method: 'delete',
+    path: '/repairs/:id/advised/:itemId',
+    policy: write,
+    ifMatch: true,
+    handle: ({ deps, member, params, rev, now }) =>
+      removeAdvised(deps, member, { repairId: idOf(params), itemId: params.itemId ?? '' }, rev, now),
+  });
+  route({
+    method: 'get',
+    path: '/repairs/:id/hand-over.pdf',
+    policy: read,
+    query: paperQuerySchema,
+    limit: 'papers',
+    handle: async ({ deps, member, params, query, response }) =>
+      sendPaper(response, await handOverPaper(deps, member, idOf(params), query)),
   });
   route({
     method: 'post',

@@ -11,20 +11,13 @@ import { conflict } from '../errors/domain-error';
 import { lastMoves, type SpareMove } from '../repositories/spare-moves.repository';
 import { reservationsBySpare } from '../repositories/repairs.repository';
 import { lastSpareReadings, listSpares, openChargesBySpare, type SpareCharge } from '../repositories/spares.repository';
-import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
+import { candidateGround, candidatePlan, candidateState, candidateTarget } from './candidate-plan';
 import { titleOf } from './charge-words';
 import { toOptionalInstant } from './instants';
-import { correctedVolt, meterOffsetSdVolts } from './meter-trust';
-import { computedTarget, curveOf, orNull, packCapacityAh } from './pack-numbers';
-import { channelsFor, PLAN_SEED, ROOM_CELSIUS } from './plan-inputs';
-import { moduleParameters, spareState, workshopParameters } from './plan-parameters';
-import { repairFacts } from './repair-facts';
-import { loadRepairFile, type RepairFile } from './repair-file';
+import { curveOf, orNull, packCapacityAh } from './pack-numbers';
+import { channelsFor } from './plan-inputs';
+import { loadRepairFile } from './repair-file';
 import { usedCapacity } from './spare-capacity';
-import { closesInSeconds } from './working-hours';
-
-/** Samples of a candidate's band: enough to put them in order. The plan of the one that is chosen has its own. */
-const FEW_SAMPLES = 16;
 
 /** Spares reckoned before others get their turn. */
 const AT_ONCE = 20;
@@ -33,16 +26,9 @@ const AT_ONCE = 20;
 interface Reckoned {
   seconds: CandidateDto['seconds'];
   channelName: string | null;
+  needsCharge: boolean;
   problems: string[];
   ruledOut: boolean;
-}
-
-interface Target {
-  volts: number;
-  toleranceMillivolts: number;
-  meterId: string | null;
-  celsius: number | null;
-  standardErrorMillivolts: number;
 }
 
 /**
@@ -60,49 +46,23 @@ export async function candidates(deps: Deps, member: Member, id: string, now: nu
       'no_type',
       `The pack of ${file.repair.number} has no module type yet. Choose one: it says which spares fit.`,
     );
-  const target = targetOf(file, type, now);
+  const target = candidateTarget(file, type, now);
   const readings = await lastSpareReadings(manager, workshopId);
   const charges = await openChargesBySpare(manager, workshopId);
   const moves = await lastMoves(manager, workshopId);
   const reservations = await reservationsBySpare(manager, workshopId);
-  const workshop = await workshopForPlans(manager, workshopId);
   const bench = await channelsFor(manager, workshopId, { id: '', moduleTypeId: type.id }, false, meters, now);
   const channels = distinct(bench.channels);
+  const ground = target === null ? null : candidateGround(file, type, target, channels, now);
   const known = new Map<string, Reckoned>();
 
   const reckon = (spare: Spare, reading: SpareReading): Reckoned => {
-    if (target === null) return { seconds: null, channelName: null, problems: [], ruledOut: false };
-    const meter = meters.get(reading.meterId ?? '') ?? null;
-    const packMeter = meters.get(target.meterId ?? '') ?? null;
-    const state = spareState(spare, type, reading, meter, now);
+    if (ground === null) return { seconds: null, channelName: null, needsCharge: true, problems: [], ruledOut: false };
+    const state = candidateState(spare, type, reading, meters, now);
     const key = JSON.stringify(state);
     const before = known.get(key);
     if (before) return before;
-    const meterVolts = meterOffsetSdVolts(
-      [packMeter, meter].filter((one) => one !== null),
-      now,
-    );
-    const found = reckoned({
-      module: moduleParameters(type),
-      spare: state,
-      target: {
-        volts: correctedVolt(target.volts, packMeter),
-        toleranceVolts: target.toleranceMillivolts / 1000,
-        meterId: target.meterId,
-        celsius: target.celsius,
-        sdVolts: null,
-      },
-      channels,
-      resistors: [],
-      neighbour: null,
-      workshop: workshopParameters(workshop, closesInSeconds(workshop, now, now)),
-      readyByS: null,
-      clipOnAtS: 0,
-      celsius: state.celsius ?? ROOM_CELSIUS,
-      seed: PLAN_SEED,
-      samples: FEW_SAMPLES,
-      ...(meterVolts === undefined ? {} : { spreads: { meterVolts } }),
-    });
+    const found = reckoned(candidatePlan(ground, state, reading));
     known.set(key, found);
     return found;
   };
@@ -130,6 +90,7 @@ export async function candidates(deps: Deps, member: Member, id: string, now: nu
       capacitySource: source,
       seconds: found?.seconds ?? null,
       channelName: found?.channelName ?? null,
+      needsCharge: found?.needsCharge ?? true,
       problems: found?.problems ?? elsewhere,
       ruledOut: found?.ruledOut ?? true,
       reservedFor,
@@ -148,28 +109,6 @@ export async function candidates(deps: Deps, member: Member, id: string, now: nu
       (one.seconds?.p50 ?? Infinity) - (other.seconds?.p50 ?? Infinity) ||
       one.label.localeCompare(other.label, 'en', { numeric: true }),
   );
-}
-
-/** The taken target, else the computed one; null: the pack is not read yet. */
-function targetOf(
-  { repair, meters, workshop, readings, ...file }: RepairFile,
-  type: ModuleType,
-  now: number,
-): Target | null {
-  const facts = repairFacts({ repair, readings, ...file });
-  const { arrival } = facts;
-  const meter = meters.get(arrival?.meterId ?? '') ?? null;
-  const computed = arrival === null ? null : computedTarget(arrival, repair, facts.failing, type, meter, now);
-  const known = facts.target ?? computed;
-  if (known === null) return null;
-  const reading = readings.find(({ id }) => id === known.readingId);
-  return {
-    volts: known.volts,
-    toleranceMillivolts: facts.target?.toleranceMillivolts ?? workshop.toleranceMillivolts,
-    meterId: reading?.meterId ?? null,
-    celsius: reading?.celsius ?? null,
-    standardErrorMillivolts: known.standardErrorMillivolts,
-  };
 }
 
 /** Why a spare is not to be had, whatever its numbers; empty: it is. */
@@ -191,17 +130,20 @@ function whyNot(
 
 function reckoned(input: PlanInput): Reckoned {
   const { option, alreadyWithin, refusals, reason, cautions } = soonestTerminals(input);
-  const out = (problems: string[]): Reckoned => ({ seconds: null, channelName: null, problems, ruledOut: true });
+  const out = (problems: string[]): Reckoned => ({
+    ...{ seconds: null, channelName: null, needsCharge: true, problems, ruledOut: true },
+  });
   if (refusals.length > 0) return out(refusals.map(({ text }) => text));
   if (alreadyWithin) {
-    const problems = ['It rests within the tolerance already. Nothing is to be charged.'];
-    return { seconds: { p10: 0, p50: 0, p90: 0 }, channelName: null, problems, ruledOut: false };
+    const problems = cautions.map(({ text }) => text);
+    return { seconds: { p10: 0, p50: 0, p90: 0 }, channelName: null, needsCharge: false, problems, ruledOut: false };
   }
   if (option === null) return out([reason ?? 'No channel can bring it there.']);
-  const apart = option.cautions.filter(({ code }) => code === 'ends-apart');
+  const apart = option.apart === null ? [] : [option.apart];
   return {
     seconds: option.totalS,
     channelName: input.channels.find(({ channelId }) => channelId === option.channelIds[0])?.name ?? null,
+    needsCharge: true,
     problems: [...apart, ...cautions].map(({ text }) => text),
     ruledOut: false,
   };
@@ -219,7 +161,8 @@ function distinct(channels: readonly ChannelParameters[]): ChannelParameters[] {
   return [...first.values()];
 }
 
-function agreementOf(type: ModuleType, spareAh: number, targetVolts: number): CandidateDto['agreement'] {
+/** How far a spare lies from its neighbours at full and at low charge, matched at the target. */
+export function agreementOf(type: ModuleType, spareAh: number, targetVolts: number): CandidateDto['agreement'] {
   const curve = curveOf(type);
   const found = orNull(() =>
     spareAgreement({

@@ -12,6 +12,7 @@ import { insertRemovedModule } from '../repositories/repair-rows.repository';
 import { findRepairWithSpare } from '../repositories/repairs.repository';
 import { bare, listText, lowerFirst, titleOf } from './charge-words';
 import { newId } from './ids';
+import { conditionBlock, conditionOf } from './module-conditions';
 import { repairFacts } from './repair-facts';
 import { repairSteps } from './repair-steps';
 import { changeRepair } from './repair-write';
@@ -28,6 +29,11 @@ export const recordRemoved = (
     const { modulePosition, fate } = input;
     if (groupsAt(file.repair, modulePosition).length === 0)
       throw invalid({ modulePosition: `This pack has no module ${modulePosition}. Type another.` });
+    const seen = conditionOf(file, modulePosition);
+    if (fate === 'stock' && seen !== null)
+      throw invalid({
+        fate: `Module ${modulePosition} is ${seen.condition} on a photo and is no spare. Scrap it, or put it into quarantine.`,
+      });
     const { workshopId, personId } = member;
     await insertRemovedModule(manager, { id: newId(), workshopId, repairId: id, ...input, at: now, personId });
     const why = input.note === null ? '' : `: ${bare(input.note)}`;
@@ -46,6 +52,8 @@ export const handOverRepair = (
   now: number,
 ): Promise<RepairPageDto> =>
   changeRepair(deps, member, id, now, { stock: true }, ({ file, note }) => {
+    const condition = conditionBlock(file, repairFacts(file).failing);
+    if (condition !== null) throw conflict('module_condition', condition.text);
     const missing = repairSteps(file).flatMap(({ step, state }) =>
       state === 'done' ? [] : [lowerFirst(repairStepNames[step])],
     );

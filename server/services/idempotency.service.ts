@@ -8,7 +8,7 @@ import { inTransaction } from './unit-of-work';
 
 const keptForMs = 24 * 60 * 60_000;
 /** Status of a row whose effect is committed and whose answer is not stored yet. */
-const withoutAnswer = 0;
+export const withoutAnswer = 0;
 
 export interface Answer {
   status: number;

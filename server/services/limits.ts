@@ -12,6 +12,8 @@ const addressRules = {
   /** Every refresh, link look-up and other open question. */
   open: { points: 300, durationS: 60 },
   estimate: { points: 120, durationS: 60 },
+  /** Papers are drawn anew for every question. */
+  papers: { points: 60, durationS: 60 },
   createWorkshop: { points: 5, durationS: 3600 },
   join: { points: 20, durationS: 600 },
   wallCode: { points: 20, durationS: 600 },

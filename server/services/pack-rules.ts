@@ -23,9 +23,13 @@ export const packColumnsOf = ({
   groupCount,
   groupsPerModule,
   positionOfGroup,
-}: PackInput): PackInput => ({
+  bleedAmps,
+  aimMillivolts,
+}: PackInput) => ({
   moduleTypeId,
   groupCount,
   groupsPerModule,
   positionOfGroup,
+  bleedAmps: bleedAmps ?? null,
+  aimMillivolts: aimMillivolts ?? null,
 });

@@ -34,22 +34,39 @@ export async function quarantineSpare(
     const spare = await knownSpare(manager, workshopId, id);
     await refuseAside(manager, spare);
     if (spare.rev !== rev) throw stale(await spareDtoOf(manager, workshopId, id));
-    const waiting = await takeOffSeen(manager, member, spare, input, now);
-    const { condition, shelfPlace } = input;
-    Object.assign(spare, {
-      ...(condition ? { condition } : {}),
-      ...(shelfPlace === undefined ? {} : { shelfPlace }),
-      quarantinedAt: now,
-      quarantineReason: input.reason,
-      quarantinedById: member.personId,
-      rev: spare.rev + 1,
-    });
-    await saveSpare(manager, spare);
+    const waiting = await setSpareAside(manager, member, spare, input, now);
     return { dto: await spareDtoOf(manager, workshopId, id), announcement: waiting };
   });
   if (announcement) announce(deps, announcement, now);
   else announceStock(deps, member, now);
   return dto;
+}
+
+/**
+ * The same within a transaction of somebody else, for what is seen elsewhere: it is set aside as it stands now.
+ * @returns what is to be announced of the charge that was taken off; null where none waited
+ * @throws DomainError 409 as above
+ */
+export async function setSpareAside(
+  manager: EntityManager,
+  member: Member,
+  spare: Spare,
+  input: QuarantineInput,
+  now: number,
+): Promise<Announcement | null> {
+  await refuseAside(manager, spare);
+  const waiting = await takeOffSeen(manager, member, spare, input, now);
+  const { condition, shelfPlace } = input;
+  Object.assign(spare, {
+    ...(condition ? { condition } : {}),
+    ...(shelfPlace === undefined ? {} : { shelfPlace }),
+    quarantinedAt: now,
+    quarantineReason: input.reason,
+    quarantinedById: member.personId,
+    rev: spare.rev + 1,
+  });
+  await saveSpare(manager, spare);
+  return waiting;
 }
 
 async function refuseAside(manager: EntityManager, spare: Spare): Promise<void> {

@@ -2,10 +2,13 @@ import type { RepairBlock } from '@/shared/contract/repair';
 import { isUnderWay } from './charge-stages';
 import { millivoltsText } from './charge-words';
 import type { RepairFacts } from './repair-facts';
+import { conditionBlock } from './module-conditions';
 import type { RepairFile } from './repair-file';
 
+type BlockFile = Pick<RepairFile, 'workshop' | 'photos' | 'removed' | 'people'>;
+
 /** What keeps a repair from going on; null: nothing does. */
-export function repairBlock(file: Pick<RepairFile, 'workshop'>, facts: RepairFacts): RepairBlock | null {
+export function repairBlock(file: BlockFile, facts: RepairFacts): RepairBlock | null {
   const { arrival, source, settled, verdict, open } = facts;
   if (facts.disagree && source !== null && verdict !== null)
     return {
@@ -13,6 +16,8 @@ export function repairBlock(file: Pick<RepairFile, 'workshop'>, facts: RepairFac
       text: disagreeText(verdict.positions[0] ?? null, source),
       role: file.workshop.technicianDecides === true ? null : 'foreman',
     };
+  const condition = conditionBlock(file, facts.failing);
+  if (condition !== null) return condition;
   if (arrival !== null && settled === null && verdict !== null && verdict.positions.length === 0)
     return {
       code: 'module-unknown',

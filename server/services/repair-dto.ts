@@ -2,6 +2,8 @@ import type { EntityManager } from 'typeorm';
 import type { PackDto } from '@/shared/contract/pack';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type {
+  AdvisedDto,
+  FittedSpareDto,
   RemovedModuleDto,
   RepairCardDto,
   RepairDto,
@@ -10,7 +12,7 @@ import type {
   RepairState,
   RepairWaitDto,
 } from '@/shared/contract/repair';
-import { positionsOf } from '@/shared/contract/pack';
+import { aimOf, positionsOf } from '@/shared/contract/pack';
 import type { Repair } from '../entities/repair';
 import type { StoredTarget } from '../entities/repair-json';
 import type { RepairWait } from '../entities/repair-wait';
@@ -19,13 +21,16 @@ import { personRef } from './alert-dto';
 import { chargeCard } from './charge-dto';
 import { overdueSince } from './charge-due';
 import { toInstant, toOptionalInstant } from './instants';
+import { moduleConditions } from './module-conditions';
 import { computedTarget, packVerdict } from './pack-numbers';
 import { packReadingDto, secondSourceDto } from './pack-reading-dto';
+import { photoDto } from './photo-dto';
 import { repairBlock } from './repair-block';
 import { repairFacts, type RepairFacts } from './repair-facts';
 import { loadRepairFile, type RepairFile } from './repair-file';
 import { expectedAfterFit, forecastOf } from './repair-forecast';
 import { repairSteps } from './repair-steps';
+import { spareAsItIs } from './spare-as-it-is';
 
 export const stateOf = (repair: Repair): RepairState =>
   repair.deletedAt !== null
@@ -36,13 +41,18 @@ export const stateOf = (repair: Repair): RepairState =>
         ? 'handed-over'
         : 'open';
 
-type Layout = Pick<Repair, 'moduleTypeId' | 'groupCount' | 'groupsPerModule' | 'positionOfGroup'>;
+type Pack = Pick<
+  Repair,
+  'moduleTypeId' | 'groupCount' | 'groupsPerModule' | 'positionOfGroup' | 'bleedAmps' | 'aimMillivolts'
+>;
 
-export const packDto = (pack: Layout, moduleTypeName: string | null): PackDto => ({
+export const packDto = (pack: Pack, moduleTypeName: string | null): PackDto => ({
   moduleTypeId: pack.moduleTypeId,
   groupCount: pack.groupCount,
   groupsPerModule: pack.groupsPerModule,
   positionOfGroup: pack.positionOfGroup,
+  bleedAmps: pack.bleedAmps,
+  aimMillivolts: aimOf(pack),
   moduleTypeName,
   moduleCount: new Set(positionsOf(pack)).size,
 });
@@ -114,6 +124,29 @@ const removedDto = ({ people, removed }: RepairFile): RemovedModuleDto[] =>
     by: personRef(people, personId)!,
   }));
 
+const fittedDto = ({ people, spares, fittedAsItIs }: RepairFile): FittedSpareDto[] =>
+  fittedAsItIs.map(({ id, spareId, modulePosition, groupVolts, note, at, personId }) => ({
+    id,
+    spare: { id: spareId, label: spares.get(spareId)?.label ?? '' },
+    modulePosition,
+    groupVolts,
+    note,
+    at: toInstant(at),
+    by: personRef(people, personId)!,
+  }));
+
+const advisedDto = ({ people, advised }: RepairFile): AdvisedDto[] =>
+  advised.map(({ id, text, outcome, detail, agreedBy, agreedAt, at, personId }) => ({
+    id,
+    text,
+    outcome,
+    detail,
+    agreedBy,
+    agreedAt: toOptionalInstant(agreedAt),
+    at: toInstant(at),
+    by: personRef(people, personId)!,
+  }));
+
 /** A repair with all but its log. */
 export function repairDto(file: RepairFile, now: number): RepairDto {
   const { repair, people, type, spare, meters } = file;
@@ -135,8 +168,12 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
     target: targetDto(file, facts.target),
     spare: spare === null ? null : { id: spare.id, label: spare.label, shelfPlace: spare.shelfPlace },
     charges: file.charges.map((charge) => chargeCard(charge, now)),
+    fittedAsItIs: fittedDto(file),
     removed: removedDto(file),
+    advised: advisedDto(file),
     wait: file.waits.map((wait) => waitDto(file, wait)),
+    photos: file.photos.map((photo) => photoDto(file, photo)),
+    conditions: moduleConditions(file),
     expectedAfterFit: expectedAfterFit(file, facts),
     forecast: forecastOf(file, facts),
     bookedBy: personRef(people, repair.bookedById)!,
@@ -156,6 +193,14 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
             by: personRef(people, repair.deletedById)!,
             reason: repair.deleteReason ?? '',
           },
+    erased:
+      repair.erasedAt === null
+        ? null
+        : {
+            at: toInstant(repair.erasedAt),
+            by: personRef(people, repair.erasedById)!,
+            reason: repair.eraseReason ?? '',
+          },
   };
 }
 
@@ -163,8 +208,10 @@ export function repairDto(file: RepairFile, now: number): RepairDto {
 export async function repairPage(manager: EntityManager, file: RepairFile, now: number): Promise<RepairPageDto> {
   const { id, workshopId } = file.repair;
   const events = (await eventsOfRepairs(manager, workshopId, [id])).get(id) ?? [];
+  const asItIs = await spareAsItIs(manager, file, now);
   return {
     ...repairDto(file, now),
+    asItIs: asItIs && { readAt: toInstant(asItIs.reading.at), old: asItIs.old },
     events: events.map((event): RepairEventDto => ({
       id: event.id,
       at: toInstant(event.at),

@@ -1,4 +1,5 @@
 /** What stands of a repair: its rows without what a later reading or decision has overtaken. */
+import type { FittedSpare } from '../entities/fitted-spare';
 import type { PackReading } from '../entities/pack-reading';
 import type { StoredTarget } from '../entities/repair-json';
 import type { SecondSource } from '../entities/second-source';
@@ -7,7 +8,7 @@ import { isOpen } from './charge-stages';
 import { packVerdict, type PackVerdict } from './pack-numbers';
 import type { RepairFile } from './repair-file';
 
-export type FactRows = Pick<RepairFile, 'repair' | 'readings' | 'sources' | 'charges'>;
+export type FactRows = Pick<RepairFile, 'repair' | 'readings' | 'sources' | 'charges' | 'fittedAsItIs'>;
 
 export interface RepairFacts {
   /** The latest arrival reading; null: none, or it is to be read again. */
@@ -31,6 +32,8 @@ export interface RepairFacts {
   /** The charge that is ready or fitted. */
   ready: ChargeFile | null;
   fitted: ChargeFile | null;
+  /** The spare that went in without a charge. */
+  asItIs: FittedSpare | null;
   /** The latest reading since the fit. */
   proof: PackReading | null;
 }
@@ -59,9 +62,9 @@ export function repairFacts(file: FactRows): RepairFacts {
     sources.find((one) => one.decision !== 'read-again' && one.createdAt >= anewAt && arrival !== null) ?? null;
   const settled = source === null ? null : (source.decidedPosition ?? (source.agrees ? source.modulePosition : null));
   const failing = settled ?? worst;
-  const counting = charges.filter(
-    ({ charge }) => charge.createdAt >= anewAt || (charge.modulePosition !== null && charge.modulePosition === failing),
-  );
+  const counts = (at: number, position: string | null): boolean =>
+    at >= anewAt || (position !== null && position === failing);
+  const counting = charges.filter(({ charge }) => counts(charge.createdAt, charge.modulePosition));
   const target = repair.target;
   const targetStands = target !== null && target.at >= anewAt && readings.some(({ id }) => id === target.readingId);
   const stageOf = (...stages: string[]): ChargeFile | null =>
@@ -79,6 +82,7 @@ export function repairFacts(file: FactRows): RepairFacts {
     open: counting.find(({ charge }) => isOpen(charge.stage)) ?? null,
     ready: stageOf('ready', 'fitted'),
     fitted: stageOf('fitted'),
+    asItIs: file.fittedAsItIs.find(({ at, modulePosition }) => counts(at, modulePosition)) ?? null,
     proof: readings.find((one) => one.stage !== 'arrival' && one.createdAt >= anewAt) ?? null,
   };
 }

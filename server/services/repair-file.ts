@@ -1,6 +1,9 @@
 import type { EntityManager } from 'typeorm';
+import type { AdvisedItem } from '../entities/advised-item';
+import type { FittedSpare } from '../entities/fitted-spare';
 import type { ModuleType } from '../entities/module-type';
 import type { PackReading } from '../entities/pack-reading';
+import type { Photo } from '../entities/photo';
 import type { RemovedModule } from '../entities/removed-module';
 import type { Repair } from '../entities/repair';
 import type { RepairWait } from '../entities/repair-wait';
@@ -10,7 +13,10 @@ import { notFound } from '../errors/domain-error';
 import { sparesById, typesById } from '../repositories/charge-stock.repository';
 import { listPackTypes } from '../repositories/pack-types.repository';
 import {
+  advisedOfRepairs,
+  fittedOfRepairs,
   peopleOfRepairs,
+  photosOfRepairs,
   readingsOfRepairs,
   removedOfRepairs,
   sourcesOfRepairs,
@@ -27,7 +33,14 @@ export interface RepairFile extends Bench {
   readings: PackReading[];
   sources: SecondSource[];
   removed: RemovedModule[];
+  /** The first advised first. */
+  advised: AdvisedItem[];
   waits: RepairWait[];
+  photos: Photo[];
+  /** Spares that went in without a charge. */
+  fittedAsItIs: FittedSpare[];
+  /** The spares that its own rows name, by id; a charge has its own. */
+  spares: Map<string, Spare>;
   charges: ChargeFile[];
   /** Who has fitted the module of a charge, by the charge's id. */
   fitters: Map<string, string>;
@@ -53,6 +66,9 @@ export async function loadRepairFiles(
   const readings = await readingsOfRepairs(manager, workshopId, ids);
   const sources = await sourcesOfRepairs(manager, workshopId, ids);
   const removed = await removedOfRepairs(manager, workshopId, ids);
+  const photos = await photosOfRepairs(manager, workshopId, ids);
+  const asItIs = await fittedOfRepairs(manager, workshopId, ids);
+  const advised = await advisedOfRepairs(manager, workshopId, ids);
   const waits = await waitsOfRepairs(manager, workshopId, ids);
   const charges = await listChargesOfRepairs(manager, workshopId, ids);
   const chargeFiles = await loadFiles(manager, workshopId, charges, around);
@@ -60,7 +76,11 @@ export async function loadRepairFiles(
   const fitters = await fittersOf(manager, workshopId, fitted);
   const packTypes = new Map((await listPackTypes(manager, workshopId)).map((type) => [type.id, type.name]));
   const types = await typesById(manager, workshopId, given(repairs.map(({ moduleTypeId }) => moduleTypeId)));
-  const spares = await sparesById(manager, workshopId, given(repairs.map(({ spareId }) => spareId)));
+  const spares = await sparesById(
+    manager,
+    workshopId,
+    given([...repairs, ...[...photos.values(), ...asItIs.values()].flat()].map(({ spareId }) => spareId)),
+  );
   return repairs.map((repair) => ({
     ...around,
     repair,
@@ -68,7 +88,11 @@ export async function loadRepairFiles(
     readings: readings.get(repair.id) ?? [],
     sources: sources.get(repair.id) ?? [],
     removed: removed.get(repair.id) ?? [],
+    advised: advised.get(repair.id) ?? [],
     waits: waits.get(repair.id) ?? [],
+    photos: photos.get(repair.id) ?? [],
+    fittedAsItIs: asItIs.get(repair.id) ?? [],
+    spares,
     charges: chargeFiles.filter(({ charge }) => charge.repairId === repair.id),
     fitters,
     packTypeName: packTypes.get(repair.packTypeId ?? '') ?? null,

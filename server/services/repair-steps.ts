@@ -1,4 +1,5 @@
 import type { PersonRef } from '@/shared/contract/common';
+import { aimOf } from '@/shared/contract/pack';
 import { repairSteps as stepOrder, type RepairStep, type RepairStepDto } from '@/shared/contract/repair';
 import { personRef } from './alert-dto';
 import { toInstant } from './instants';
@@ -6,12 +7,6 @@ import { packVerdict } from './pack-numbers';
 import { repairBlock } from './repair-block';
 import { repairFacts, type RepairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
-
-/**
- * Spread at or under which a repair is proven, mV. Common practice: what packs in good order show at rest, and about what
- * two readings of 96 groups can tell apart.
- */
-export const PROVEN_SPREAD_MILLIVOLTS = 10;
 
 interface Done {
   at: number;
@@ -55,21 +50,22 @@ function spareDone({ repair }: RepairFile, facts: RepairFacts): Done | null {
   return charge ? done(charge.createdAt, charge.createdById) : null;
 }
 
-function chargeDone({ ready }: RepairFacts): Done | null {
-  if (ready === null) return null;
+/** A spare that needed no charge is past it once it is in. */
+function chargeDone({ ready, asItIs }: RepairFacts): Done | null {
+  if (ready === null) return asItIs === null ? null : done(asItIs.at, asItIs.personId);
   const { charge, restChecks } = ready;
   return done(charge.readyAt ?? charge.closedAt ?? charge.createdAt, restChecks.at(-1)?.personId ?? charge.personId);
 }
 
-function fitDone({ fitters }: RepairFile, { fitted }: RepairFacts): Done | null {
-  if (fitted === null) return null;
+function fitDone({ fitters }: RepairFile, { fitted, asItIs }: RepairFacts): Done | null {
+  if (fitted === null) return asItIs === null ? null : done(asItIs.at, asItIs.personId);
   const { charge } = fitted;
   return done(charge.closedAt ?? charge.createdAt, fitters.get(charge.id) ?? charge.personId);
 }
 
 /** A reading since the fit at or under the aim; else what was accepted with the hand-over. */
 function proveDone({ repair }: RepairFile, { proof }: RepairFacts): Done | null {
-  if (proof !== null && packVerdict(proof.groupVolts, repair).spreadMillivolts <= PROVEN_SPREAD_MILLIVOLTS)
+  if (proof !== null && packVerdict(proof.groupVolts, repair).spreadMillivolts <= aimOf(repair))
     return done(proof.at, proof.personId);
   return proof !== null && repair.handedOverAt !== null ? done(repair.handedOverAt, repair.handedOverById) : null;
 }

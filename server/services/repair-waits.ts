@@ -12,6 +12,7 @@ const waitsForModule = ({ repair }: RepairFile, facts: RepairFacts): boolean =>
   repair.deletedAt === null &&
   facts.target !== null &&
   facts.ready === null &&
+  facts.asItIs === null &&
   !facts.disagree;
 
 /**
@@ -25,7 +26,7 @@ export async function syncWait(manager: EntityManager, file: RepairFile, now: nu
   const waits = waitsForModule(file, facts);
   if (waits === (open !== null)) return;
   if (open !== null) {
-    const ended = facts.ready?.charge.readyAt ?? facts.ready?.charge.closedAt ?? now;
+    const ended = facts.ready?.charge.readyAt ?? facts.ready?.charge.closedAt ?? facts.asItIs?.at ?? now;
     open.toAt = Math.min(now, Math.max(open.fromAt, ended));
     await updateWait(manager, repair.workshopId, open.id, { toAt: open.toAt });
     return;

@@ -1,12 +1,14 @@
 /** The second source: a hand meter at the module that the pack's reading points to, before anything is lifted out. */
+import type { EntityManager } from 'typeorm';
 import { compareSources } from '@/calc/index';
 import { groupsAt } from '@/shared/contract/pack';
-import type { DecideSourceInput, SecondSourceInput } from '@/shared/contract/pack-reading';
+import { SOURCE_TOLERANCE_VOLTS, type DecideSourceInput, type SecondSourceInput } from '@/shared/contract/pack-reading';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import type { Deps, Member } from '../deps';
 import type { PackReading } from '../entities/pack-reading';
 import type { SecondSource } from '../entities/second-source';
 import { conflict, invalid, notFound } from '../errors/domain-error';
+import { countChargersWithMeter } from '../repositories/chargers.repository';
 import { insertSecondSource, updateSecondSource } from '../repositories/repair-rows.repository';
 import { bare, cellText } from './charge-words';
 import { newId } from './ids';
@@ -15,12 +17,6 @@ import { readAt } from './read-instant';
 import { repairFacts } from './repair-facts';
 import type { RepairFile } from './repair-file';
 import { changeRepair } from './repair-write';
-
-/**
- * What two instruments may show differently at one group once their offset is off, V: within it the odd group of a module
- * is told from a healthy one all the same. Common practice.
- */
-const TOLERANCE_VOLTS = 0.01;
 
 /**
  * Keeps what the hand meter shows, and whether that agrees with the pack: the same volts at a module that the pack points
@@ -36,6 +32,7 @@ export const addSecondSource = (
 ): Promise<RepairPageDto> =>
   changeRepair(deps, member, id, now, {}, async ({ manager, file, note }) => {
     const { reading, groups, at } = checked(file, input, now);
+    await refuseDisplay(manager, file, input.meterId);
     const found = compareSources({
       packVolts: reading.groupVolts,
       oddModule: groups,
@@ -43,7 +40,7 @@ export const addSecondSource = (
         ...input.groupVolts.map((volts, place) => ({ group: groups[place]!, volts })),
         ...(input.healthyGroup === null ? [] : [input.healthyGroup]),
       ],
-      toleranceVolts: TOLERANCE_VOLTS,
+      toleranceVolts: SOURCE_TOLERANCE_VOLTS,
     });
     const { positions } = packVerdict(reading.groupVolts, file.repair);
     const elsewhere = input.pointsTo !== null && input.pointsTo !== input.modulePosition;
@@ -80,6 +77,17 @@ export const addSecondSource = (
       at,
     );
   });
+
+/** A charger's display shows its own clips, not a module in the pack. @throws DomainError 400 */
+async function refuseDisplay(
+  manager: EntityManager,
+  { repair, meters }: RepairFile,
+  meterId: string | null,
+): Promise<void> {
+  if (meterId === null || (await countChargersWithMeter(manager, repair.workshopId, meterId)) === 0) return;
+  const name = meters.get(meterId)?.name ?? 'This meter';
+  throw invalid({ meterId: `${name} is the display of a charger. Read the module with a hand meter.` });
+}
 
 function checked(
   { repair, readings, meters }: RepairFile,

@@ -1,6 +1,5 @@
 import { Readable } from 'node:stream';
 import { DateTime } from 'luxon';
-import Papa from 'papaparse';
 import type { EntityManager } from 'typeorm';
 import type { WaitRowDto, WaitsDto, WaitsQuery } from '@/shared/contract/waits';
 import type { Deps, Member } from '../deps';
@@ -15,6 +14,7 @@ import {
 } from '../repositories/waits.repository';
 import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
 import { titleOf } from './charge-words';
+import { csvBegin, csvLines } from './csv';
 import { toInstant } from './instants';
 import { waitPeriod, type DayPeriod } from './wait-period';
 import { isInsideBand, waitFigures, waitSeconds, type Wait } from './wait-statistics';
@@ -51,7 +51,7 @@ export async function waitsCsv(deps: Deps, member: Member, query: WaitsQuery, no
 }
 
 async function* csvPages(manager: EntityManager, workshopId: string, ask: Ask): AsyncGenerator<string> {
-  yield '\ufeff' + csvLines([CSV_HEADER]);
+  yield csvBegin + csvLines([CSV_HEADER]);
   let after: { readyAt: number; id: string } | null = null;
   for (;;) {
     const page: WaitedCharge[] = await listWaitedCharges(manager, workshopId, ask.where, { size: CSV_PAGE, after });
@@ -74,9 +74,6 @@ const CSV_HEADER = [
   'Actual, min',
   'Inside band',
 ];
-
-const csvLines = (rows: (string | number)[][]): string =>
-  `${Papa.unparse(rows, { escapeFormulae: true, newline: '\r\n' })}\r\n`;
 
 function csvRow(wait: Wait, zone: string): (string | number)[] {
   const local = (at: number): string => DateTime.fromMillis(at, { zone }).toFormat('yyyy-MM-dd HH:mm');

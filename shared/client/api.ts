@@ -5,11 +5,16 @@
  * no session say `open` and are never refreshed.
  */
 import { isProblem, OfflineError, problemOf } from './api-problem';
+import { sendForm } from './send-form';
 import { recall, remember } from './storage';
 
 export interface CallOptions {
   query?: Record<string, string | number | boolean | null | undefined>;
   body?: unknown;
+  /** A form with a file, in place of a JSON body. */
+  form?: FormData;
+  /** Hears how much of the form has gone out, as a share. */
+  onSent?: (share: number) => void;
   /** Revision of what is changed; goes out as If-Match. */
   rev?: number;
   /** One per act of a person, kept over retries (see useWrite). */
@@ -22,6 +27,8 @@ export interface CallOptions {
 /** What the door stands on; tests put their own in. */
 export interface ApiEnvironment {
   fetch: (input: string, init: RequestInit) => Promise<Response>;
+  /** Sends a form and tells how far it is; left out: without telling. */
+  sendForm?: (input: string, init: RequestInit, onSent: (share: number) => void) => Promise<Response>;
   /** Runs the work while no other tab of this browser runs work of the same name. */
   alone: <T>(name: string, work: () => Promise<T>) => Promise<T>;
   now: () => number;
@@ -61,13 +68,17 @@ export function makeApi(env: ApiEnvironment) {
     if (options.idempotencyKey) headers['idempotency-key'] = options.idempotencyKey;
     let response: Response;
     try {
-      response = await env.fetch(addressOf(path, options.query), {
+      const { form, onSent } = options;
+      const init: RequestInit = {
         method,
         headers,
         credentials: 'same-origin',
-        body: options.body === undefined ? undefined : JSON.stringify(options.body),
+        body: form ?? (options.body === undefined ? undefined : JSON.stringify(options.body)),
         signal: options.signal,
-      });
+      };
+      const address = addressOf(path, options.query);
+      response =
+        form && onSent && env.sendForm ? await env.sendForm(address, init, onSent) : await env.fetch(address, init);
     } catch (error) {
       if (options.signal?.aborted) throw error;
       tell((listener) => listener.unheard());
@@ -124,6 +135,8 @@ export function makeApi(env: ApiEnvironment) {
   return {
     get: <T>(path: string, options?: CallOptions) => call<T>('GET', path, options),
     post: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('POST', path, { ...options, body }),
+    /** A file, as a form. */
+    upload: <T>(path: string, form: FormData, options?: CallOptions) => call<T>('POST', path, { ...options, form }),
     patch: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PATCH', path, { ...options, body }),
     put: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PUT', path, { ...options, body }),
     delete: <T = void>(path: string, options?: CallOptions) => call<T>('DELETE', path, options),
@@ -145,6 +158,7 @@ const alone = async <T>(name: string, work: () => Promise<T>): Promise<T> => {
 
 export const api: Api = makeApi({
   fetch: (input, init) => fetch(input, init),
+  sendForm,
   alone,
   now: () => Date.now(),
   recall,

@@ -18,6 +18,7 @@ export const roots = {
   charge: 'charge',
   repairs: 'repairs',
   repair: 'repair',
+  search: 'search',
   packTypes: 'pack-types',
   board: 'board',
   alerts: 'alerts',

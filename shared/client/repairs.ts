@@ -13,7 +13,10 @@ import type {
   SecondSourceInput,
   TakeTargetInput,
 } from '@/shared/contract/pack-reading';
+import { photoField, type PhotoNoteInput } from '@/shared/contract/photo';
 import type {
+  FitAsItIsInput,
+  AdvisedInput,
   CandidateDto,
   ChangeRepairInput,
   CorrectWaitInput,
@@ -25,6 +28,7 @@ import type {
 } from '@/shared/contract/repair';
 import { api } from './api';
 import { roots, type Root } from './query-keys';
+import { saveFile } from './save-file';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
@@ -141,10 +145,32 @@ export const useReserveSpare = () =>
 export const useFreeSpare = () =>
   useRepairWrite(({ id, rev }: RepairAct) => api.delete<RepairPageDto>(`/repairs/${id}/spare`, { rev }), withSpares);
 
+/** 409 where it needs a charge, or has to be read once more first. */
+export const useFitAsItIs = () =>
+  useRepairWrite(
+    ({ id, rev, note }: FitAsItIsInput & RepairAct) => api.post<RepairPageDto>(`/repairs/${id}/fit`, { note }, { rev }),
+    withSpares,
+  );
+
 export const useRecordRemoved = () =>
   useRepairWrite(
     ({ id, ...input }: RemovedModuleInput & { id: string }) => api.post<RepairPageDto>(`/repairs/${id}/removed`, input),
     withSpares,
+  );
+
+export const useAddAdvised = () =>
+  useRepairWrite(({ id, ...input }: AdvisedInput & { id: string }) =>
+    api.post<RepairPageDto>(`/repairs/${id}/advised`, input),
+  );
+
+export const useChangeAdvised = () =>
+  useRepairWrite(({ id, rev, itemId, ...input }: AdvisedInput & RepairAct & { itemId: string }) =>
+    api.patch<RepairPageDto>(`/repairs/${id}/advised/${itemId}`, input, { rev }),
+  );
+
+export const useRemoveAdvised = () =>
+  useRepairWrite(({ id, rev, itemId }: RepairAct & { itemId: string }) =>
+    api.delete<RepairPageDto>(`/repairs/${id}/advised/${itemId}`, { rev }),
   );
 
 /** Refused with what is missing, unless the note says why. */
@@ -174,4 +200,52 @@ export const useCorrectWait = () =>
     ({ id, rev, waitId, ...input }: CorrectWaitInput & RepairAct & { waitId: string }) =>
       api.patch<RepairPageDto>(`/repairs/${id}/wait/${waitId}`, input, { rev }),
     [...touched, roots.waits],
+  );
+
+/** A chosen picture; `mark` tells two of them apart, which JSON cannot. */
+export interface PhotoToSend {
+  id: string;
+  file: Blob;
+  mark: string;
+  onSent: (share: number) => void;
+}
+
+export const useAddPhoto = () =>
+  useRepairWrite(({ id, file, onSent }: PhotoToSend, idempotencyKey) => {
+    const form = new FormData();
+    form.append(photoField, file, 'photo');
+    return api.upload<RepairPageDto>(`/repairs/${id}/photos`, form, { idempotencyKey, onSent });
+  });
+
+/** What is seen may set a spare aside and take a waiting charge off. */
+export const useNotePhoto = () =>
+  useRepairWrite(
+    ({ id, rev, ...input }: PhotoNoteInput & RepairAct) => api.patch<RepairPageDto>(`/photos/${id}`, input, { rev }),
+    withCharges,
+  );
+
+export const useRemovePhoto = () =>
+  useRepairWrite(({ id, rev }: RepairAct) => api.delete<RepairPageDto>(`/photos/${id}`, { rev }));
+
+/** Where a photo's picture is. */
+export const photoAddress = (id: string, part: 'picture' | 'thumbnail'): string =>
+  `/api/photos/${id}${part === 'thumbnail' ? '/thumbnail' : ''}`;
+
+/** Saves the repairs of a list as CSV on this device; without a state all but the deleted ones. */
+export const useSaveRepairs = () =>
+  useWrite<RepairFilter>({
+    send: async (filter) => saveFile(await api.blob('/repairs.csv', { query: { ...filter } }), 'repairs.csv'),
+  });
+
+/** Saves everything that is kept of the customer of a repair as a file on this device. */
+export const useSaveCustomerData = () =>
+  useWrite<string>({
+    send: async (id) => saveFile(await api.blob(`/repairs/${id}/customer.json`), 'customer-data.json'),
+  });
+
+export const useEraseCustomer = () =>
+  useRepairWrite(
+    ({ id, reason }: { id: string; reason: string }) =>
+      api.post<RepairPageDto>(`/repairs/${id}/customer/erase`, { reason }),
+    [...touched, roots.search],
   );

@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import type { WaitsDto, WaitsQuery } from '@/shared/contract/waits';
 import { api } from './api';
 import { roots } from './query-keys';
+import { saveFile } from './save-file';
 import { staleTimes } from './stale-times';
 
 export const useWaits = (query: WaitsQuery = {}) =>
@@ -14,11 +15,6 @@ export const useWaits = (query: WaitsQuery = {}) =>
 
 /** Saves the table as CSV on this device. */
 export async function downloadWaits(query: WaitsQuery = {}): Promise<void> {
-  const file = URL.createObjectURL(await api.blob('/waits.csv', { query: { ...query } }));
-  const link = document.createElement('a');
-  link.href = file;
-  link.download = `waits${query.from ? `-${query.from}` : ''}${query.to ? `-${query.to}` : ''}.csv`;
-  link.click();
-  // The browser has taken it over by then.
-  setTimeout(() => URL.revokeObjectURL(file), 10_000);
+  const name = `waits${query.from ? `-${query.from}` : ''}${query.to ? `-${query.to}` : ''}.csv`;
+  saveFile(await api.blob('/waits.csv', { query: { ...query } }), name);
 }

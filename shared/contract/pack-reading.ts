@@ -6,6 +6,10 @@ import { groupVolts, optionalQuantity, quantity } from './quantity';
 
 export const readingStages = ['arrival', 'after-fit', 'after-balance'] as const;
 export type ReadingStage = (typeof readingStages)[number];
+/** 'Arrival', 'After the fit', 'Balance charge 2' */
+export const readingName = ({ stage, balanceCount }: Pick<PackReadingInput, 'stage' | 'balanceCount'>): string =>
+  stage === 'arrival' ? 'Arrival' : stage === 'after-fit' ? 'After the fit' : `Balance charge ${balanceCount ?? 1}`;
+
 export const readingSources = ['typed', 'pasted', 'file'] as const;
 
 const stageShape = {
@@ -78,6 +82,12 @@ export interface PackReadingDto extends Omit<PackReadingInput, 'at'> {
   } | null;
   setAside: { reason: string; at: Instant; by: PersonRef } | null;
 }
+
+/**
+ * What two instruments may show differently at one group once their offset is off, V: within it the odd group of a module
+ * is told from a healthy one all the same. Common practice.
+ */
+export const SOURCE_TOLERANCE_VOLTS = 0.01;
 
 /** Hand-meter readings of the suspected module's groups, the meter in the hand. */
 export const secondSourceSchema = z.object({

@@ -1,10 +1,16 @@
 /** A pack: how many groups it has, in which modules, and the workshop's own templates of it. */
 import * as z from 'zod/mini';
 import { id, optionalText, text } from './common';
-import { quantity } from './quantity';
+import { optionalQuantity, quantity } from './quantity';
 
 export const MOST_GROUPS = 400;
 const MOST_PER_MODULE = 24;
+
+/**
+ * Spread at or under which a repair is proven where its pack has no aim of its own, mV. Common practice: what packs in good
+ * order show at rest, and about what two readings of 96 groups can tell apart.
+ */
+export const USUAL_AIM_MILLIVOLTS = 10;
 
 /** The name of a module position as the workshop has it: '17', '3 left'. */
 const position = text('The module position', 20);
@@ -20,6 +26,10 @@ export const packSchema = z
     groupsPerModule: quantity({ name: 'Groups per module', unit: '', min: 1, max: MOST_PER_MODULE, whole: true }),
     /** One position for each group, where the order is another; null: 1, 1, 2, 2, … */
     positionOfGroup: z.nullable(z.array(position)),
+    /** Current of the pack's own balancing, A; empty: nobody knows it. 0: it does not balance. */
+    bleedAmps: z.optional(optionalQuantity({ name: 'Bleed current', unit: 'A', min: 0, max: 10 })),
+    /** Spread at or under which it is proven, mV; empty: the usual one. */
+    aimMillivolts: z.optional(optionalQuantity({ name: 'Aim', unit: 'mV', min: 1, max: 200, whole: true })),
   })
   .check((context) => {
     const { groupCount, groupsPerModule, positionOfGroup } = context.value;
@@ -48,6 +58,8 @@ export const packTypeSchema = z.object({
 export type PackTypeInput = z.infer<typeof packTypeSchema>;
 
 export interface PackDto extends PackInput {
+  bleedAmps: number | null;
+  aimMillivolts: number;
   moduleTypeName: string | null;
   moduleCount: number;
 }
@@ -73,3 +85,6 @@ export function groupsAt(
 ): number[] {
   return positionsOf(pack).flatMap((one, group) => (one === modulePosition ? [group] : []));
 }
+
+export const aimOf = ({ aimMillivolts }: Pick<PackInput, 'aimMillivolts'>): number =>
+  aimMillivolts ?? USUAL_AIM_MILLIVOLTS;

@@ -4,6 +4,7 @@ import { id, instant, optionalInstant, optionalText, reason, text, type Instant,
 import type { ChargeCardDto } from './charge';
 import { packSchema, type PackDto } from './pack';
 import type { ComputedTargetDto, PackReadingDto, SecondSourceDto, TargetDto } from './pack-reading';
+import type { ModuleConditionDto, PhotoDto } from './photo';
 import type { Band } from './plan';
 
 /** The seven steps of the strip, in their order. */
@@ -43,6 +44,10 @@ export type ChangeRepairInput = z.infer<typeof changeRepairSchema>;
 
 export const reserveSpareSchema = z.object({ spareId: id });
 
+/** The reserved spare goes in without a charge. */
+export const fitAsItIsSchema = z.object({ note: optionalText('The note', 300) });
+export type FitAsItIsInput = z.infer<typeof fitAsItIsSchema>;
+
 export const moduleFates = ['scrap', 'quarantine', 'stock', 'went-back-in'] as const;
 export type ModuleFate = (typeof moduleFates)[number];
 export const moduleFateNames: Record<ModuleFate, string> = {
@@ -65,6 +70,31 @@ export const removedModuleSchema = z
     }),
   );
 export type RemovedModuleInput = z.infer<typeof removedModuleSchema>;
+
+export const advisedOutcomes = ['open', 'done', 'booked', 'declined'] as const;
+export type AdvisedOutcome = (typeof advisedOutcomes)[number];
+export const advisedOutcomeNames: Record<AdvisedOutcome, string> = {
+  open: 'Not answered yet',
+  done: 'Done',
+  booked: 'Booked',
+  declined: 'Declined by the owner',
+};
+/** What was advised, and what became of it. What is declined carries the customer's name, typed as agreement. */
+export const advisedSchema = z
+  .object({
+    text: text('What is advised', 80),
+    outcome: z.enum(advisedOutcomes),
+    /** '8 September' */
+    detail: optionalText('The detail', 80),
+    agreedBy: optionalText('The customer’s name', 80),
+  })
+  .check(
+    z.refine((one) => one.outcome !== 'declined' || one.agreedBy !== null, {
+      message: 'Type the name of the customer who declined it.',
+      path: ['agreedBy'],
+    }),
+  );
+export type AdvisedInput = z.infer<typeof advisedSchema>;
 
 export const handOverRepairSchema = z.object({ note: optionalText('The note', 500) });
 export const archiveRepairSchema = z.object({ archived: z.boolean() });
@@ -92,7 +122,7 @@ export type RepairState = 'open' | 'handed-over' | 'archived' | 'deleted';
 
 /** What keeps a repair from going on. */
 export interface RepairBlock {
-  code: 'sources-disagree' | 'module-unknown' | 'check-outside' | 'charge-odd';
+  code: 'sources-disagree' | 'module-condition' | 'module-unknown' | 'check-outside' | 'charge-odd';
   /** 'The pack says module 17, your meter says 18.' */
   text: string;
   /** Who may decide; null: anybody. */
@@ -137,6 +167,26 @@ export interface RemovedModuleDto extends RemovedModuleInput {
   by: PersonRef;
 }
 
+/** A spare that was fitted without a charge. */
+export interface FittedSpareDto {
+  id: string;
+  spare: { id: string; label: string };
+  modulePosition: string | null;
+  /** By which it was within the tolerance. */
+  groupVolts: number[];
+  note: string | null;
+  at: Instant;
+  by: PersonRef;
+}
+
+export interface AdvisedDto extends AdvisedInput {
+  id: string;
+  at: Instant;
+  by: PersonRef;
+  /** When the name was typed. */
+  agreedAt: Instant | null;
+}
+
 export interface RepairEventDto {
   id: string;
   at: Instant;
@@ -149,6 +199,10 @@ export interface BalanceForecastDto {
   aimMillivolts: number;
   /** Null: it does not converge, or too little is known. */
   charges: Band | null;
+  /** What one of them has on the charger, h. */
+  hoursPerCharge: number;
+  /** Spread after each of the next ones, mV; empty where nothing is forecast. */
+  expectedMillivolts: Band[];
   from: 'bleed' | 'log' | 'both' | null;
   doesNotConverge: 'capacity-spread' | 'no-change' | 'grows' | null;
 }
@@ -165,17 +219,29 @@ export interface RepairDto extends RepairCardDto, Omit<RepairInput, 'number' | '
   target: TargetDto | null;
   spare: { id: string; label: string; shelfPlace: string | null } | null;
   charges: ChargeCardDto[];
+  /** Newest first. */
+  fittedAsItIs: FittedSpareDto[];
   removed: RemovedModuleDto[];
+  /** In the order in which it was advised. */
+  advised: AdvisedDto[];
   wait: RepairWaitDto[];
+  /** Newest first. */
+  photos: PhotoDto[];
+  /** What the photos show of its modules; the worst first. */
+  conditions: ModuleConditionDto[];
   /** Spread expected after the fit, mV, by the spare's reading or its check. */
   expectedAfterFit: { low: number; likely: number; high: number } | null;
   forecast: BalanceForecastDto | null;
   bookedBy: PersonRef;
   handedOver: { at: Instant; by: PersonRef; note: string | null } | null;
   deleted: { at: Instant; by: PersonRef; reason: string } | null;
+  /** The customer's name and contact were erased. */
+  erased: { at: Instant; by: PersonRef; reason: string } | null;
 }
 
 export interface RepairPageDto extends RepairDto {
+  /** The reserved spare rests within the tolerance: it needs no charge. Old: it has to be read once more. Null: it is not so. */
+  asItIs: { readAt: Instant; old: boolean } | null;
   events: RepairEventDto[];
 }
 
@@ -205,6 +271,8 @@ export interface CandidateDto {
   /** Whole time to the target on the best free channel, rest and check included, s; null: it cannot. */
   seconds: Band | null;
   channelName: string | null;
+  /** False: it rests within the tolerance already and can be fitted as it is. */
+  needsCharge: boolean;
   /** Sentences: what is wrong with it, or why it cannot. */
   problems: string[];
   /** Cannot be planned for this target. */

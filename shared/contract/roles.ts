@@ -17,7 +17,9 @@ export const capabilities = [
   'repair:read',
   'repair:write',
   'repair:decide',
+  'repair:export',
   'repair:delete',
+  'customer:data',
   'alert:take',
   'wall:approve',
   'wall:revoke',
@@ -47,11 +49,19 @@ const foreman: Capability[] = [
   'charge:correct-any',
   'charge:assign',
   'repair:decide',
+  'repair:export',
   'wall:approve',
   'wall:revoke',
   'waits:read',
 ];
-const manager: Capability[] = [...foreman, 'repair:delete', 'equipment:write', 'people:write', 'workshop:write'];
+const manager: Capability[] = [
+  ...foreman,
+  'repair:delete',
+  'customer:data',
+  'equipment:write',
+  'people:write',
+  'workshop:write',
+];
 
 export const roleCapabilities: Record<Role, readonly Capability[]> = { technician, foreman, manager };
 

@@ -2,13 +2,20 @@
 import os from 'node:os';
 import { benchAlarms } from './alarms';
 import { benchCalibration } from './calibration';
+import { benchCandidates } from './candidates';
 import { benchFirstLoad } from './first-load';
 import { benchLive } from './live';
 import { benchPlan } from './plan';
 import { benchStep } from './step';
 
 /** Under a minute together. */
-const quick = { step: benchStep, plan: benchPlan, live: benchLive, 'first-load': benchFirstLoad };
+const quick = {
+  step: benchStep,
+  plan: benchPlan,
+  live: benchLive,
+  candidates: benchCandidates,
+  'first-load': benchFirstLoad,
+};
 /** Minutes each, and so only by name. */
 const slow = { calibration: benchCalibration, alarms: benchAlarms };
 const benches: Record<string, () => AsyncIterable<string> | Promise<string[]>> = { ...quick, ...slow };

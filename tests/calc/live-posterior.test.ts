@@ -1,14 +1,16 @@
 import { add, identity, inv, matrix, multiply, ones, transpose, type Matrix } from 'mathjs';
 import { describe, expect, it } from 'vitest';
 import { posteriorOf } from '@/calc/live/posterior';
-import { liveDraws } from '@/calc/live/live-draws';
+import { LIVE_AXES, liveDraws } from '@/calc/live/live-draws';
+import { LiveFacts, slopesOf } from '@/calc/live/live-facts';
 import type { Look } from '@/calc/live/particle-set';
 import { planModel } from '@/calc/plan/plan-model';
+import { SAMPLE_AXES } from '@/calc/plan/samples';
 import { channel, planInput } from './plan-fixtures';
 
 const model = planModel(planInput({ channels: [channel('A1')] }));
 const draws = liveDraws(256, 11);
-const AXES = [0, 1, 3];
+const AXES = (['spare-meter', 'charger-meter', 'temperature'] as const).map((axis) => SAMPLE_AXES.indexOf(axis));
 /** Looks whose readings are straight in three of the draws, with an error that they share and one of their own. */
 const SLOPES = [
   [0.9, 0.1, -0.4],
@@ -21,7 +23,16 @@ const OWN = 0.3;
 const SHARED = 0.5;
 const looks = READ.map((read, row): Look => ({
   memory: 'volts',
-  residual: ({ draws: own }) => read - AXES.reduce((sum, axis, k) => sum + SLOPES[row]![k]! * own[axis]!, 0),
+  residual: {
+    read,
+    place: -1,
+    movedSoc: 0,
+    slopes: slopesOf({
+      spareMeter: -SLOPES[row]![0]!,
+      chargerMeter: -SLOPES[row]![1]!,
+      temperature: -SLOPES[row]![2]!,
+    }),
+  },
   sharedSd: SHARED,
   kept: 1,
   ownVariance: OWN ** 2,
@@ -37,9 +48,10 @@ describe('samples by all readings at once', () => {
   const weighed = multiply(transpose(a), inv(noise));
   const spread = inv(add(identity(3) as Matrix, multiply(weighed, a)) as Matrix);
   const centre = multiply(spread, multiply(weighed, matrix(READ)));
-  const { samples, weights } = posteriorOf(model, looks, draws, AXES);
-  const meanOf = (of: (own: number[]) => number): number =>
-    samples.reduce((sum, sample, at) => sum + weights[at]! * of(sample.draws), 0);
+  const { draws: found, weights } = posteriorOf(new LiveFacts(model, []), looks, draws, AXES);
+  const drawsOf = (of: Float64Array, at: number): Float64Array => of.subarray(at * LIVE_AXES, (at + 1) * LIVE_AXES);
+  const meanOf = (of: (own: Float64Array) => number): number =>
+    weights.reduce((sum, weight, at) => sum + weight * of(drawsOf(found, at)), 0);
 
   it('have the mean of the closed form to 0.1 of its spread and its variance to 20 %', () => {
     AXES.forEach((axis, k) => {
@@ -52,6 +64,6 @@ describe('samples by all readings at once', () => {
   });
 
   it('leave the axes that nothing was read of as they were drawn', () => {
-    samples.forEach((sample, at) => expect(sample.draws[7]).toBe(draws[at]![7]));
+    weights.forEach((_, at) => expect(drawsOf(found, at)[7]).toBe(drawsOf(draws, at)[7]));
   });
 });

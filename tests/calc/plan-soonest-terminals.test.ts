@@ -27,8 +27,20 @@ describe('the soonest way through the terminals', () => {
     const input = planInput({ channels, samples: 16 });
     const { option, alreadyWithin, reason } = soonestTerminals(input);
     const best = soonestOfPlan(input);
-    expect([option!.id, option!.totalS]).toEqual([best.id, best.totalS]);
+    expect([option!.channelIds, option!.totalS]).toEqual([best.channelIds, best.totalS]);
+    expect(option!.apart).toEqual(best.cautions.find(({ code }) => code === 'ends-apart') ?? null);
     expect([alreadyWithin, reason]).toEqual([false, null]);
+  });
+
+  test('of two groups that end 8 mV apart, inside ±5 mV each, says so in the words of the whole plan', () => {
+    const base = planInput({ channels: [channel('a', { maxAmps: 10 })], samples: 16 });
+    const [volts] = base.spare.groupVolts;
+    const input = { ...base, spare: { ...base.spare, groupVolts: [volts!, volts! + 0.016] } };
+    const { option } = soonestTerminals(input);
+    const best = soonestOfPlan(input);
+    expect([option!.channelIds, option!.totalS]).toEqual([best.channelIds, best.totalS]);
+    expect(option!.apart?.text).toMatch(/^Ends 8.mV apart, just inside ±5.mV\.$/);
+    expect(option!.apart).toEqual(best.cautions.find(({ code }) => code === 'ends-apart'));
   });
 
   test('is none where the spare rests at the target, is swollen, or no channel is there, each with its word', () => {

@@ -3,7 +3,14 @@ import type { ReactNode } from 'react';
 import { Text } from 'react-native';
 import { vi } from 'vitest';
 
-export const router = { push: vi.fn(), replace: vi.fn(), back: vi.fn(), canGoBack: () => true, setParams: vi.fn() };
+export const router = {
+  push: vi.fn(),
+  replace: vi.fn(),
+  back: vi.fn(),
+  canGoBack: () => true,
+  setParams: vi.fn(),
+  dismissTo: vi.fn(),
+};
 export const useRouter = () => router;
 export const useLocalSearchParams = () => ({});
 export const usePathname = () => '/';

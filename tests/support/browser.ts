@@ -17,7 +17,8 @@ const executablePath = chromiumPath();
 /** `describe` for tests in a browser: skipped where there is no Chromium (`npm test` then lists what did not run). */
 export const describeInBrowser = describe.skipIf(!executablePath);
 
-export function openBrowser(): Promise<Browser> {
+/** @param more further arguments of Chromium, such as a camera to pretend */
+export function openBrowser(more: string[] = []): Promise<Browser> {
   if (!executablePath) throw new Error('No Chromium on this machine. Debian: apt-get install chromium');
   return chromium.launch({
     executablePath,
@@ -29,6 +30,7 @@ export function openBrowser(): Promise<Browser> {
       '--disable-background-networking',
       '--disable-component-update',
       '--disable-sync',
+      ...more,
     ],
   });
 }

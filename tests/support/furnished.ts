@@ -1,5 +1,7 @@
 /** Two workshops with one of everything, made over the API as their people do it: for tests that walk all routes. */
 import { Alert } from '@/server/entities/alert';
+import { Charge } from '@/server/entities/charge';
+import { RestCheck } from '@/server/entities/rest-check';
 import { SpareCapacity } from '@/server/entities/spare-capacity';
 import { makeSleeper } from '@/server/live/sleeper-loop';
 import type { ChargeDto } from '@/shared/contract/charge';
@@ -31,6 +33,8 @@ export interface Furnished {
   /** A charge that has rested and waits for its check. */
   restedId: string;
   restedRev: number;
+  /** A charge that was proven and fitted. */
+  provenId: string;
   /** A spare on the shelf, and a plan's option for it. */
   spareId: string;
   optionId: string;
@@ -62,6 +66,7 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.chargeId,
   furnished.readingId,
   furnished.restedId,
+  furnished.provenId,
   furnished.spareId,
   furnished.alertId,
   furnished.capacityId,
@@ -149,6 +154,22 @@ async function begin(server: TestServer, name: 'own' | 'other') {
   };
 }
 
+/** A charge that is over, as the rested one would stand after its check and its fit. */
+async function addProven(server: TestServer, restedId: string, id: string, personId: string): Promise<string> {
+  const { manager } = server.deps.dataSource;
+  const rested = await manager.findOneByOrFail(Charge, { id: restedId });
+  const { workshopId } = rested;
+  const at = server.clock.now();
+  await manager.insert(Charge, { ...rested, id, number: `${rested.number}-P`, stage: 'fitted', closedAt: at });
+  const groups = [0, 1].map((group) => ({ group, volts: 3.968, deviationVolts: 0, within: true, ampHoursToGo: 0 }));
+  await manager.insert(RestCheck, {
+    ...{ id: `${id}-check`, workshopId, chargeId: id, at, personId, createdAt: at },
+    ...{ groupVolts: [3.968, 3.968], celsius: 22, meterId: null, early: false },
+    verdict: { within: true, groups, spreadVolts: 0, worstGroup: 0 },
+  });
+  return id;
+}
+
 /** A second charge that runs, an alert, an invitation and a wall. */
 async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin>>): Promise<Furnished> {
   const { name, workshop, technician, manager, ...ids } = begun;
@@ -180,6 +201,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     clearedAt: null,
   };
   await server.deps.dataSource.manager.insert(Alert, alert);
+  const provenId = await addProven(server, ids.restedId, `${name}-proven`, workshop.people.technician.id);
   const capacity: SpareCapacity = {
     id: `${name}-capacity`,
     workshopId: workshop.id,
@@ -216,6 +238,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     restedRev: rev,
     chargeId,
     chargeRev: charge.rev,
+    provenId,
     readingId: charge.readings[0]?.id ?? '',
     optionId: plan.options[0]?.id ?? '',
     alertId: alert.id,

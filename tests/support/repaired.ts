@@ -1,6 +1,7 @@
 /** Repairs of a furnished workshop, made over the API: one whose sources disagree, one that waits, one over, one deleted. */
 import type { PackTypeDto } from '@/shared/contract/pack';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { twoHalves } from './pictures';
 import type { TestAgent } from './server';
 
 export interface Repaired {
@@ -15,6 +16,10 @@ export interface Repaired {
   waitingRev: number;
   waitingReadingId: string;
   waitId: string;
+  /** Of the first one. */
+  photoId: string;
+  /** Advised with the repair that waits. */
+  advisedId: string;
   handedOverId: string;
   deletedId: string;
 }
@@ -67,6 +72,14 @@ export const secondSourceForm = (readingId: string, change: object = {}) => ({
   ...change,
 });
 
+export const advisedForm = (change: object = {}) => ({
+  text: 'Coolant of the pack',
+  outcome: 'open',
+  detail: '',
+  agreedBy: '',
+  ...change,
+});
+
 let keys = 0;
 const newKey = (): string => `repairing-key-${(keys += 1)}`;
 
@@ -93,10 +106,14 @@ export async function addRepairs(
 
   const first = await read(await book({ personIds: [personId] }));
   const packReadingId = first.readings[0]!.id;
+  const jpeg = await twoHalves(40, 20).jpeg().toBuffer();
+  const uploaded = await technician
+    .upload(`/api/repairs/${first.id}/photos`, 'photo', jpeg, 'photo.jpg')
+    .set('Idempotency-Key', newKey());
   const disagreeing = await posted(
     technician,
     `/api/repairs/${first.id}/second-source`,
-    secondSourceForm(packReadingId, { meterId, pointsTo: '3' }),
+    secondSourceForm(packReadingId, { pointsTo: '3' }),
   );
   const second = await read(await book());
   const waitingReadingId = second.readings[0]!.id;
@@ -106,7 +123,12 @@ export async function addRepairs(
     toleranceMillivolts: '5',
     reason: null,
   });
-  const waiting = await posted(technician, `/api/repairs/${second.id}/spare`, { spareId });
+  await posted(technician, `/api/repairs/${second.id}/spare`, { spareId });
+  const waiting = await posted(
+    technician,
+    `/api/repairs/${second.id}/advised`,
+    advisedForm({ text: `${name}’s advice` }),
+  );
   const third = await book();
   await posted(technician, `/api/repairs/${third.id}/hand-over`, { note: `${name}’s customer took it along` });
   const fourth = await book();
@@ -121,6 +143,8 @@ export async function addRepairs(
     waitingRev: waiting.rev,
     waitingReadingId,
     waitId: waiting.wait[0]!.id,
+    photoId: (uploaded.body as RepairPageDto).photos[0]!.id,
+    advisedId: waiting.advised[0]!.id,
     handedOverId: third.id,
     deletedId: fourth.id,
   };

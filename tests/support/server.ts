@@ -4,6 +4,9 @@
  */
 import type { Express } from 'express';
 import { createHash } from 'node:crypto';
+import fs from 'node:fs';
+import os from 'node:os';
+import path from 'node:path';
 import request, { type Test } from 'supertest';
 import { makeLog } from '@/server/middleware/request-log';
 import { createApp } from '@/server/create-app';
@@ -100,6 +103,8 @@ export interface TestAgent {
   patch(path: string, body?: object): Test;
   put(path: string, body?: object): Test;
   delete(path: string): Test;
+  /** Sends one file as a form. */
+  upload(path: string, field: string, bytes: Buffer, name: string): Test;
   cookie(): string;
 }
 
@@ -131,10 +136,13 @@ export interface TestServer {
 
 export const testPassword = 'quiet harbour lantern 7';
 
-const testConfig: Config = {
+let folders = 0;
+/** A data folder of its own for every server; made with the first file that goes there, removed when it closes. */
+const newDataDir = (): string => path.join(os.tmpdir(), `bidewell-test-${process.pid}-${(folders += 1)}`);
+
+const testConfig: Omit<Config, 'dataDir'> = {
   port: 0,
   host: '127.0.0.1',
-  dataDir: '/nonexistent',
   webDir: '/nonexistent',
   demo: false,
   tls: null,
@@ -204,6 +212,7 @@ export const makeAgent = (app: Express, cookie: () => string): TestAgent => ({
   put: (path, body) => withCookie(request(app).put(path), cookie()).send(body ?? {}),
   patch: (path, body) => withCookie(request(app).patch(path), cookie()).send(body ?? {}),
   delete: (path) => withCookie(request(app).delete(path), cookie()),
+  upload: (path, field, bytes, name) => withCookie(request(app).post(path), cookie()).attach(field, bytes, name),
   cookie,
 });
 
@@ -214,7 +223,8 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
   const passwords = makeCountingPasswords();
   const dataSource = await makeDataSource(':memory:').initialize();
   await dataSource.runMigrations();
-  const config: Config = { ...testConfig, demo: options.demo ?? false, ...options.config };
+  const dataDir = newDataDir();
+  const config: Config = { ...testConfig, dataDir, demo: options.demo ?? false, ...options.config };
   const deps: Deps = {
     dataSource,
     clock,
@@ -249,6 +259,7 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     anyone: makeAgent(app, () => ''),
     close: async () => {
       await dataSource.destroy();
+      fs.rmSync(dataDir, { recursive: true, force: true });
     },
   };
 }

@@ -7,6 +7,8 @@ import { useLink } from '@/shared/client/link';
 import { useRepairs } from '@/shared/client/repairs';
 import { useCan } from '@/shared/client/session';
 import { useSettled } from '@/shared/client/settled';
+import { ExportLink } from '@/shared/screens/repair/export-link';
+import { FoundPart } from '@/shared/screens/repair/found-part';
 import { Button } from '@/shared/ui/primitives/button';
 import { IconButton } from '@/shared/ui/primitives/icon-button';
 import { SearchBox } from '@/shared/ui/primitives/search-box';
@@ -130,6 +132,7 @@ export default function Repairs() {
             ) : (
               <RepairRows cards={cards} at={at} old={old} onOpen={open} />
             )}
+            <FoundPart looked={looked} listed={cards.map(({ id }) => id)} onGo={(path) => router.push(path as Href)} />
             {query.hasNextPage ? (
               <Button
                 look="line"
@@ -145,6 +148,7 @@ export default function Repairs() {
               </Txt>
             ) : null}
             {older}
+            <ExportLink filter={{ q: looked, state: stateAsked(view) ?? 'open' }} offline={old} />
           </View>
         )
       ) : query.isError ? (

@@ -5,7 +5,9 @@ import { sentenceOf } from '@/shared/client/api-problem';
 import { useBoard } from '@/shared/client/board';
 import { useNow } from '@/shared/client/clock';
 import { useModuleTypes } from '@/shared/client/module-types';
+import { isScanned } from '@/shared/client/scanned-spare';
 import { useSpares } from '@/shared/client/spares';
+import { ScanButton } from '@/shared/screens/scan/scan-button';
 import { Button } from '@/shared/ui/primitives/button';
 import { IconButton } from '@/shared/ui/primitives/icon-button';
 import { SearchBox } from '@/shared/ui/primitives/search-box';
@@ -50,6 +52,16 @@ export default function Spares() {
   const takeIn = () => router.push('/spares/new' as Href);
   const shelf = all.filter((spare) => spare.where === 'shelf').length;
   const quarantine = all.filter((spare) => spare.where === 'quarantine').length;
+  const scan = (
+    <ScanButton
+      onSpare={(scanned) => {
+        const spare = all.find((one) => isScanned(scanned, one));
+        if (!spare) return `${scanned.label} is not in stock here. Take it in, or scan another.`;
+        open(spare.id);
+        return null;
+      }}
+    />
+  );
   const search = <SearchBox label="Label, type or shelf" value={looked} onChange={setLooked} />;
   const places = (
     <SegmentSwitch<Where>
@@ -80,6 +92,7 @@ export default function Spares() {
               <>
                 <View style={{ width: 270 }}>{search}</View>
                 {places}
+                {scan}
               </>
             ) : undefined
           }
@@ -99,6 +112,7 @@ export default function Spares() {
             {wide ? null : (
               <>
                 {search}
+                {scan}
                 {places}
               </>
             )}

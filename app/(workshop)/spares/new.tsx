@@ -11,6 +11,7 @@ import { useModuleTypes } from '@/shared/client/module-types';
 import { useCan } from '@/shared/client/session';
 import { useAddSpare } from '@/shared/client/spares';
 import type { MeterDto, ModuleTypeDto } from '@/shared/contract/equipment';
+import { ScanButton } from '@/shared/screens/scan/scan-button';
 import { Link } from '@/shared/ui/primitives/link';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
@@ -115,6 +116,14 @@ function Form({
           form={f.form}
           types={types}
           type={type}
+          scan={
+            <ScanButton
+              onSpare={({ label }) => {
+                f.form.setValue('label', label, { shouldDirty: true, shouldValidate: true });
+                return null;
+              }}
+            />
+          }
           onType={(chosen) =>
             f.form.setValue(
               'reading.groupVolts',

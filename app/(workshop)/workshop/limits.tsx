@@ -9,12 +9,12 @@ import { changeWorkshopSchema, type WorkshopDto } from '@/shared/contract/worksh
 import { useFormats } from '@/shared/ui/format/formats';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
-import { BoundField } from '@/shared/ui/forms/bound';
+import { BoundCheck, BoundField } from '@/shared/ui/forms/bound';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';
 import { FormScreen, Restored } from '@/shared/ui/workshop/form-screen';
 import { whoMay } from '@/shared/ui/workshop/may-change';
-import { limitFields, limitNames, limitTexts } from '@/shared/ui/workshop/settings-form';
+import { limitFields, limitNames, limitTexts, technicianDecidesName } from '@/shared/ui/workshop/settings-form';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
@@ -106,6 +106,13 @@ function LimitsForm({ workshop, onBack }: { workshop: WorkshopDto; onBack: () =>
           nextKey="next"
         />
       ))}
+      <BoundCheck
+        form={f.form}
+        name="technicianDecides"
+        title={technicianDecidesName}
+        meaning="Where the pack and the hand meter point to different modules. Not ticked: a foreman or a manager decides."
+        readOnly={!gate.may}
+      />
     </FormScreen>
   );
 }

@@ -5,13 +5,17 @@ import { useNow } from '@/shared/client/clock';
 import { useLink } from '@/shared/client/link';
 import { useModuleTypes } from '@/shared/client/module-types';
 import { useCandidates, useFreeSpare, useReserveSpare } from '@/shared/client/repairs';
+import { isScanned } from '@/shared/client/scanned-spare';
 import type { TargetDto } from '@/shared/contract/pack-reading';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { FitSheet } from '../repair/fit-sheet';
+import { ScanButton, type ScannedSpare } from '../scan/scan-button';
 import { useFormats } from '@/shared/ui/format/formats';
 import { tolerance, volts as voltsText } from '@/shared/ui/format/quantities';
 import { Button } from '@/shared/ui/primitives/button';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { CandidateRow } from '@/shared/ui/repair-spare/candidate-row';
+import { nextAsItIs } from '@/shared/ui/repair/repair-next';
 import { planHref } from '@/shared/ui/repair-spare/candidate-words';
 import { Foot } from '@/shared/ui/screen/foot';
 import { Empty } from '@/shared/ui/states/empty';
@@ -45,7 +49,17 @@ export function ChooseSpare({
   const window = type ? { lowVolts: type.dischargeLimitVolts, highVolts: type.chargeLimitVolts } : null;
   const { charge } = repair;
   const plan = charge === null ? planHref(repair) : null;
+  const asItIs = charge === null ? nextAsItIs(repair) : null;
+  const [fits, setFits] = useState(false);
   const told = { onError: (error: Error) => setProblem(sentenceOf(error)) };
+  const scanned = (spare: ScannedSpare): string | null => {
+    const candidate = list.data?.find(({ spareId, label }) => isScanned(spare, { id: spareId, label }));
+    if (!candidate) return `${spare.label} is no spare of this pack’s type in stock. Scan another.`;
+    if (candidate.ruledOut) return `${candidate.label}: ${candidate.problems.join(' ') || 'it cannot be planned.'}`;
+    setProblem(null);
+    reserve.mutate({ id: repair.id, spareId: candidate.spareId }, told);
+    return null;
+  };
   return (
     <StepScreen
       title="Choose a spare"
@@ -56,6 +70,15 @@ export function ChooseSpare({
           <Foot>
             <Button title="Open the charge" onPress={() => onGo(`/charges/${charge.id}`)} />
           </Foot>
+        ) : asItIs ? (
+          <Foot note={offline ? 'No connection: it is fitted when it is back.' : undefined} noteId="fit-why">
+            <Button
+              title={asItIs.title}
+              disabled={offline && asItIs.kind !== 'go'}
+              describedBy="fit-why"
+              onPress={() => (asItIs.kind === 'go' ? onGo(asItIs.path) : setFits(true))}
+            />
+          </Foot>
         ) : plan ? (
           <Foot>
             <Button title="Plan a charge" onPress={() => onGo(plan)} />
@@ -65,6 +88,9 @@ export function ChooseSpare({
     >
       <Txt>{`Target ${voltsText(target.volts, marks)} ${tolerance(target.toleranceMillivolts / 1000)}`}</Txt>
       {charge ? <Txt bold>{`${charge.spare.label} is on its charge for this repair, ${charge.number}.`}</Txt> : null}
+      {list.data && list.data.length > 0 ? (
+        <ScanButton disabled={offline || reserve.isPending} onSpare={scanned} />
+      ) : null}
       {repair.spare && plan ? (
         <View style={{ rowGap: 8 }}>
           <Txt bold>{`${repair.spare.label} is reserved for this repair.`}</Txt>
@@ -125,6 +151,7 @@ export function ChooseSpare({
       ) : (
         <Loading what="the spares" onRetry={() => void list.refetch()} />
       )}
+      {fits ? <FitSheet repair={repair} onClose={() => setFits(false)} onFitted={onBack} /> : null}
     </StepScreen>
   );
 }

@@ -2,7 +2,7 @@ import { useMemo, useState } from 'react';
 import { isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useDraft } from '@/shared/client/drafts';
 import { useLink } from '@/shared/client/link';
-import { useMeters } from '@/shared/client/meters';
+import { useHandMeters } from '@/shared/client/hand-meters';
 import { useAddSecondSource } from '@/shared/client/repairs';
 import { groupsAt, positionsOf } from '@/shared/contract/pack';
 import { secondSourceSchema, type PackReadingDto } from '@/shared/contract/pack-reading';
@@ -45,7 +45,7 @@ export function MeasureSource({
   );
   const draft = useDraft<SourceTyped>(`repair.source.${reading.id}`, initial);
   const typed = draft.value;
-  const meters = useMeters();
+  const meters = useHandMeters();
   const add = useAddSecondSource();
   const offline = useLink().state === 'down';
   const [problem, setProblem] = useState<string | null>(null);
@@ -166,7 +166,7 @@ export function MeasureSource({
         value={typed.meterId || null}
         error={errors.meterId}
         options={[
-          ...(meters.data ?? []).map(({ id, name }) => ({ value: id, label: name })),
+          ...meters.map(({ id, name }) => ({ value: id, label: name })),
           { value: notKnown, label: 'not known' },
         ]}
         onChange={(meterId) => change({ meterId })}

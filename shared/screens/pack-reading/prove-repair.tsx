@@ -4,10 +4,12 @@ import { useNow } from '@/shared/client/clock';
 import { useGate } from '@/shared/client/gate';
 import { useLink } from '@/shared/client/link';
 import type { RepairPageDto } from '@/shared/contract/repair';
+import { HandOverPart } from '@/shared/screens/repair/hand-over-part';
 import { HandOverSheet } from '@/shared/screens/repair/hand-over-sheet';
+import { useFormats } from '@/shared/ui/format/formats';
 import { millivolts } from '@/shared/ui/format/quantities';
-import { fitVerdict, forecastWords, spreadLog } from '@/shared/ui/pack-reading/prove-words';
-import { SpreadBars } from '@/shared/ui/pack-reading/spread-bars';
+import { fitVerdict, forecastFrom, forecastWords, spreadBars, spreadLog } from '@/shared/ui/pack-reading/prove-words';
+import { SpreadChart } from '@/shared/ui/pack-reading/spread-chart';
 import { Button } from '@/shared/ui/primitives/button';
 import { CallOut } from '@/shared/ui/primitives/call-out';
 import { Num } from '@/shared/ui/primitives/num';
@@ -15,9 +17,6 @@ import { Txt } from '@/shared/ui/primitives/txt';
 import { ButtonRow, Foot } from '@/shared/ui/screen/foot';
 import { Empty } from '@/shared/ui/states/empty';
 import { StepScreen } from './step-screen';
-
-/** Spread that a repair is proven at where no forecast names another, mV. */
-const AIM_MILLIVOLTS = 10;
 
 /** The spread over the readings against its aim, and how many balance charges are still to come. */
 export function ProveRepair({
@@ -30,6 +29,7 @@ export function ProveRepair({
   onRead: () => void;
 }) {
   const now = useNow(60_000);
+  const { marks } = useFormats();
   const gate = useGate('repair:write');
   const offline = useLink().state === 'down';
   const [handsOver, setHandsOver] = useState(false);
@@ -45,7 +45,8 @@ export function ProveRepair({
       </StepScreen>
     );
   const { forecast } = repair;
-  const aim = forecast?.aimMillivolts ?? AIM_MILLIVOLTS;
+  const aim = repair.pack.aimMillivolts;
+  const from = forecast ? forecastFrom(forecast, repair.pack, marks) : null;
   const verdict = fitVerdict(log, repair.expectedAfterFit);
   const toCome = forecast ? forecastWords(forecast) : null;
   const open = repair.state === 'open' && gate.may;
@@ -92,7 +93,9 @@ export function ProveRepair({
         </CallOut>
       ) : null}
       {verdict ? <Txt tone={verdict.good ? 'ink' : 'alarm'}>{verdict.text}</Txt> : null}
-      <SpreadBars log={log} aimMillivolts={aim} now={now} />
+      <SpreadChart bars={spreadBars(log, forecast)} aimMillivolts={aim} now={now} />
+      {from ? <Txt tone="ink2">{from}</Txt> : null}
+      <HandOverPart repair={repair} now={now} mayWrite={gate.may} />
       {handsOver ? <HandOverSheet repair={repair} onClose={() => setHandsOver(false)} /> : null}
     </StepScreen>
   );

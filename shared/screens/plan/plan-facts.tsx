@@ -1,5 +1,6 @@
 import { View } from 'react-native';
 import { useMeters } from '@/shared/client/meters';
+import { isScanned } from '@/shared/client/scanned-spare';
 import { useWorkshop } from '@/shared/client/workshop';
 import { PlanFields } from '@/shared/ui/plan/plan-fields';
 import { PlanSummary } from '@/shared/ui/plan/plan-summary';
@@ -7,6 +8,7 @@ import type { PlanTyped } from '@/shared/ui/plan/plan-typed';
 import { Link } from '@/shared/ui/primitives/link';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+import { ScanButton } from '../scan/scan-button';
 import type { PlanPage } from './use-plan-page';
 
 /** From spare to pack: in a few lines, or as fields. */
@@ -37,6 +39,17 @@ export function PlanFacts({ page, onChange }: { page: PlanPage; onChange: (chang
           today={page.today}
           toleranceHint={workshop.data ? String(workshop.data.toleranceMillivolts) : ''}
           chemistry={page.chemistry}
+          scan={
+            <ScanButton
+              onSpare={(scanned) => {
+                const found = page.spares?.find((one) => one.where !== 'fitted' && isScanned(scanned, one));
+                if (!found) return `${scanned.label} is not in stock here. Scan another, or choose the spare.`;
+                onChange({ spareId: found.id });
+                page.leave('spareId');
+                return null;
+              }}
+            />
+          }
           onChange={onChange}
           onLeave={page.leave}
         />

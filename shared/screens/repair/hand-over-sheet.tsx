@@ -3,6 +3,7 @@ import { useHandOverRepair } from '@/shared/client/repairs';
 import { repairStepNames, type RepairDto } from '@/shared/contract/repair';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Field } from '@/shared/ui/primitives/field';
+import { SheetFields } from '@/shared/ui/primitives/sheet-fields';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { problemOfAct } from './act-problem';
 
@@ -44,19 +45,21 @@ export function HandOverSheet({ repair, onClose }: { repair: RepairDto; onClose:
       }
       onClose={onClose}
     >
-      <Field
-        label="Note"
-        value={draft.value}
-        onChangeText={(text) => draft.set(text)}
-        multiline
-        lines={3}
-        maxLength={500}
-      />
-      {problem ? (
-        <Txt tone="alarm" bold role="alert">
-          {problem}
-        </Txt>
-      ) : null}
+      <SheetFields under>
+        <Field
+          label="Note"
+          value={draft.value}
+          onChangeText={(text) => draft.set(text)}
+          multiline
+          lines={3}
+          maxLength={500}
+        />
+        {problem ? (
+          <Txt tone="alarm" bold role="alert">
+            {problem}
+          </Txt>
+        ) : null}
+      </SheetFields>
     </ConfirmSheet>
   );
 }

@@ -1,7 +1,7 @@
 import { View } from 'react-native';
 import { useGate } from '@/shared/client/gate';
 import { useArchiveRepair, useRestoreRepair } from '@/shared/client/repairs';
-import type { RepairDto } from '@/shared/contract/repair';
+import type { RepairPageDto } from '@/shared/contract/repair';
 import { Button } from '@/shared/ui/primitives/button';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { nextOfRepair } from '@/shared/ui/repair/repair-next';
@@ -14,12 +14,16 @@ export function NextButton({
   offline,
   onGo,
   onHandOver,
+  onRemoved,
+  onFit,
 }: {
-  repair: RepairDto;
+  repair: RepairPageDto;
   mayDecide: boolean;
   offline: boolean;
   onGo: (path: string) => void;
   onHandOver: () => void;
+  onRemoved: () => void;
+  onFit: () => void;
 }) {
   const archive = useArchiveRepair();
   const restore = useRestoreRepair();
@@ -37,6 +41,8 @@ export function NextButton({
   const press = () => {
     if (next.kind === 'go') onGo(next.path);
     else if (next.kind === 'hand-over') onHandOver();
+    else if (next.kind === 'removed') onRemoved();
+    else if (next.kind === 'fit') onFit();
     else if (next.kind === 'restore') restore.mutate({ id: repair.id });
     else archive.mutate({ id: repair.id, archived: next.kind === 'archive' });
   };

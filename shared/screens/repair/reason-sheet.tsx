@@ -1,6 +1,7 @@
 import { useDraft } from '@/shared/client/drafts';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Field } from '@/shared/ui/primitives/field';
+import { SheetFields } from '@/shared/ui/primitives/sheet-fields';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { problemOfAct } from './act-problem';
 
@@ -51,19 +52,21 @@ export function ReasonSheet({
       }
       onClose={onClose}
     >
-      <Field
-        label="Reason"
-        value={draft.value}
-        onChangeText={(text) => draft.set(text)}
-        multiline
-        lines={2}
-        maxLength={300}
-      />
-      {problem ? (
-        <Txt tone="alarm" bold role="alert">
-          {problem}
-        </Txt>
-      ) : null}
+      <SheetFields under>
+        <Field
+          label="Reason"
+          value={draft.value}
+          onChangeText={(text) => draft.set(text)}
+          multiline
+          lines={2}
+          maxLength={300}
+        />
+        {problem ? (
+          <Txt tone="alarm" bold role="alert">
+            {problem}
+          </Txt>
+        ) : null}
+      </SheetFields>
     </ConfirmSheet>
   );
 }

@@ -5,6 +5,7 @@ import { moduleFateNames, moduleFates, type ModuleFate, type RepairDto } from '@
 import { ChoiceList } from '@/shared/ui/primitives/choice-row';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Field } from '@/shared/ui/primitives/field';
+import { SheetFields } from '@/shared/ui/primitives/sheet-fields';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { problemOfAct } from './act-problem';
 
@@ -62,34 +63,36 @@ export function RemovedSheet({ repair, onClose }: { repair: RepairDto; onClose: 
       }
       onClose={onClose}
     >
-      <Field
-        label="Module position"
-        kind="label"
-        value={position}
-        maxLength={20}
-        onChangeText={(text) => change({ position: text })}
-        error={position.trim() !== '' && !known ? `This pack has no module ${position.trim()}.` : undefined}
-      />
-      <ChoiceList
-        label="What became of it"
-        value={fate}
-        outset={14}
-        onChange={(next) => change({ fate: next })}
-        choices={moduleFates.map((value) => ({ value, title: moduleFateNames[value], meaning: meanings[value] }))}
-      />
-      <Field
-        label={fate === 'went-back-in' ? 'What was advised, and why it was declined' : 'Note'}
-        value={note}
-        multiline
-        lines={2}
-        maxLength={300}
-        onChangeText={(text) => change({ note: text })}
-      />
-      {problem ? (
-        <Txt tone="alarm" bold role="alert">
-          {problem}
-        </Txt>
-      ) : null}
+      <SheetFields>
+        <Field
+          label="Module position"
+          kind="label"
+          value={position}
+          maxLength={20}
+          onChangeText={(text) => change({ position: text })}
+          error={position.trim() !== '' && !known ? `This pack has no module ${position.trim()}.` : undefined}
+        />
+        <ChoiceList
+          label="What became of it"
+          value={fate}
+          outset={14}
+          onChange={(next) => change({ fate: next })}
+          choices={moduleFates.map((value) => ({ value, title: moduleFateNames[value], meaning: meanings[value] }))}
+        />
+        <Field
+          label={fate === 'went-back-in' ? 'What was advised, and why it was declined' : 'Note'}
+          value={note}
+          multiline
+          lines={2}
+          maxLength={300}
+          onChangeText={(text) => change({ note: text })}
+        />
+        {problem ? (
+          <Txt tone="alarm" bold role="alert">
+            {problem}
+          </Txt>
+        ) : null}
+      </SheetFields>
     </ConfirmSheet>
   );
 }

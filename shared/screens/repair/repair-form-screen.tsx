@@ -82,13 +82,13 @@ function Form({
   onBack: () => void;
   onDone: (repair: RepairPageDto) => void;
 }) {
-  const { zone } = useFormats();
+  const { zone, marks } = useFormats();
   const today = dayOf(useNow(60_000), zone);
   const me = useMember().person.id;
   const offline = useLink().state === 'down';
   const start = useStartRepair();
   const change = useChangeRepair();
-  const [initial] = useState(() => (repair ? repairTexts(repair, zone, today) : emptyRepair(today, me)));
+  const [initial] = useState(() => (repair ? repairTexts(repair, zone, today, marks) : emptyRepair(today, me)));
   const fresh = repair === null;
   const schema = useMemo(() => (fresh ? newRepairForm(zone) : changeRepairForm(zone)), [fresh, zone]);
   const f = useContractForm({
@@ -103,7 +103,7 @@ function Form({
     },
   });
   const stale = isProblem(f.error) && isConflict(f.error) && f.error.status === 412;
-  const theirs = stale ? repairTexts((f.error as { present: RepairDto }).present, zone, today) : null;
+  const theirs = stale ? repairTexts((f.error as { present: RepairDto }).present, zone, today, marks) : null;
   const named = (id: string) => people.find((person) => person.id === id)?.name ?? 'somebody';
   return (
     <FormScreen
@@ -126,7 +126,7 @@ function Form({
     >
       <Restored
         restored={f.restored}
-        onAfresh={() => f.clear(repair ? repairTexts(repair, zone, today) : emptyRepair(today, me))}
+        onAfresh={() => f.clear(repair ? repairTexts(repair, zone, today, marks) : emptyRepair(today, me))}
       />
       {theirs ? (
         <ChangedMeanwhile

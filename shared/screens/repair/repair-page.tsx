@@ -17,8 +17,9 @@ import { EventsPart } from '@/shared/ui/repair/events-part';
 import { FactsPart } from '@/shared/ui/repair/facts-part';
 import { PackHead } from '@/shared/ui/repair/pack-head';
 import { ReadingsPart } from '@/shared/ui/repair/readings-part';
+import { FittedPart } from '@/shared/ui/repair/fitted-part';
 import { RemovedPart } from '@/shared/ui/repair/removed-part';
-import { packWords, standing, vehicleAndBay } from '@/shared/ui/repair/repair-words';
+import { packWords, standing, unrecorded, vehicleAndBay } from '@/shared/ui/repair/repair-words';
 import { SourceLine } from '@/shared/ui/repair/source-line';
 import { StepStrip } from '@/shared/ui/repair/step-strip';
 import { WaitPart } from '@/shared/ui/repair/wait-part';
@@ -28,7 +29,10 @@ import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { Surface } from '@/shared/ui/theme/surface';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+import { CustomerPart } from './customer-part';
+import { HandOverPart } from './hand-over-part';
 import { NextButton } from './next-button';
+import { PhotosPart } from './photos-part';
 import { RepairMenu } from './repair-menu';
 import { RepairSheets, type OpenSheet } from './repair-sheets';
 
@@ -49,6 +53,7 @@ export function RepairPage({
   const wide = useBreakpoint() === 'wide';
   const offline = useLink().state === 'down';
   const gate = useGate('repair:decide');
+  const mayAdvise = useGate('repair:write').may;
   const [menu, setMenu] = useState(false);
   const [sheet, setSheet] = useState<OpenSheet | null>(null);
   const [chosen, setChosen] = useState<string | null>(null);
@@ -65,6 +70,8 @@ export function RepairPage({
       offline={offline}
       onGo={onGo}
       onHandOver={() => setSheet({ kind: 'hand-over' })}
+      onRemoved={() => setSheet({ kind: 'removed' })}
+      onFit={() => setSheet({ kind: 'fit' })}
     />
   );
   const readings = (
@@ -76,9 +83,17 @@ export function RepairPage({
       onSetAside={open && !offline ? (reading) => setSheet({ kind: 'set-aside', reading }) : null}
     />
   );
+  const photos = <PhotosPart repair={repair} now={now} offline={offline} mayWrite={mayWrite} />;
   const tail = (
     <>
-      <RemovedPart removed={repair.removed} now={now} />
+      <FittedPart fitted={repair.fittedAsItIs} now={now} />
+      <RemovedPart
+        removed={repair.removed}
+        missing={unrecorded(repair)}
+        now={now}
+        onRecord={mayWrite && mayAdvise ? () => setSheet({ kind: 'removed' }) : null}
+      />
+      <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
       <WaitPart
         waits={repair.wait}
         now={now}
@@ -88,6 +103,7 @@ export function RepairPage({
   );
   const booked = Date.parse(repair.bookedAt);
   const since = `${daysBetween(dayOf(booked, zone), dayOf(now, zone)) === 0 ? 'today ' : ''}${moment(booked, zone, now, marks)}`;
+  const customer = <CustomerPart repair={repair} offline={offline} />;
   return (
     <Screen
       header={
@@ -119,7 +135,6 @@ export function RepairPage({
             <View style={{ rowGap: 24 }}>
               <FactsPart repair={repair} now={now} />
               {wide ? readings : null}
-              {wide ? tail : null}
             </View>
           }
           work={
@@ -133,22 +148,29 @@ export function RepairPage({
               {repair.sources.length > 0 ? <Rule gap={0} /> : null}
               <SourceLine repair={repair} now={now} />
               {wide ? <EventsPart events={repair.events} now={now} /> : null}
+              {wide ? photos : null}
             </View>
           }
           side={
             wide ? (
-              <Surface tone="sheet" style={{ padding: 18, borderRadius: 10, rowGap: 16 }}>
-                {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
-                <HandedOver repair={repair} />
-                {next}
-              </Surface>
+              <View style={{ rowGap: 24 }}>
+                <Surface tone="sheet" style={{ padding: 18, borderRadius: 10, rowGap: 16 }}>
+                  {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
+                  <HandedOver repair={repair} />
+                  {next}
+                </Surface>
+                {tail}
+                {customer}
+              </View>
             ) : (
               <View style={{ rowGap: 24 }}>
                 <HandedOver repair={repair} />
                 {repair.charge ? <ChargePart card={repair.charge} at={at} old={offline} onOpen={onGo} /> : null}
                 {readings}
+                {photos}
                 {tail}
                 <EventsPart events={repair.events} now={now} />
+                {customer}
               </View>
             )
           }

@@ -1,7 +1,7 @@
 import { useDeleteRepair, useSetReadingAside } from '@/shared/client/repairs';
-import type { PackReadingDto } from '@/shared/contract/pack-reading';
-import type { RepairDto, RepairWaitDto } from '@/shared/contract/repair';
-import { readingName } from '@/shared/ui/repair/repair-words';
+import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading';
+import type { RepairDto, RepairPageDto, RepairWaitDto } from '@/shared/contract/repair';
+import { FitSheet } from './fit-sheet';
 import { HandOverSheet } from './hand-over-sheet';
 import { ReasonSheet } from './reason-sheet';
 import { RemovedSheet } from './removed-sheet';
@@ -9,7 +9,7 @@ import { WaitSheet } from './wait-sheet';
 
 /** The sheet that is open over a repair's page, with what it is about. */
 export type OpenSheet =
-  | { kind: 'hand-over' | 'removed' | 'delete' }
+  | { kind: 'hand-over' | 'removed' | 'fit' | 'delete' }
   | { kind: 'wait'; wait: RepairWaitDto }
   | { kind: 'set-aside'; reading: PackReadingDto };
 
@@ -19,7 +19,7 @@ export function RepairSheets({
   now,
   onClose,
 }: {
-  repair: RepairDto;
+  repair: RepairPageDto;
   sheet: OpenSheet;
   now: number;
   onClose: () => void;
@@ -29,6 +29,8 @@ export function RepairSheets({
       return <HandOverSheet repair={repair} onClose={onClose} />;
     case 'removed':
       return <RemovedSheet repair={repair} onClose={onClose} />;
+    case 'fit':
+      return <FitSheet repair={repair} onClose={onClose} />;
     case 'wait':
       return <WaitSheet repair={repair} wait={sheet.wait} now={now} onClose={onClose} />;
     case 'delete':

@@ -8,6 +8,7 @@ import { dayOf, daysBetween, instantOfDay, localTime } from '@/shared/ui/format/
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { DateTimeField, type DayAndTime } from '@/shared/ui/primitives/date-time-field';
 import { Field } from '@/shared/ui/primitives/field';
+import { SheetFields } from '@/shared/ui/primitives/sheet-fields';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { problemOfAct } from './act-problem';
 
@@ -92,42 +93,44 @@ export function WaitSheet({
       }
       onClose={onClose}
     >
-      <DateTimeField
-        label="From"
-        dayLabel="Day it began"
-        value={draft.value.from}
-        onChange={(value) => change({ from: value })}
-        today={today}
-        from={earliest}
-        to={0}
-      />
-      {draft.value.to === null ? (
-        <Txt tone="ink2">It waits still. It ends by itself when its charge is ready.</Txt>
-      ) : (
+      <SheetFields under>
         <DateTimeField
-          label="To"
-          dayLabel="Day it ended"
-          value={draft.value.to}
-          onChange={(value) => change({ to: value })}
+          label="From"
+          dayLabel="Day it began"
+          value={draft.value.from}
+          onChange={(value) => change({ from: value })}
           today={today}
           from={earliest}
           to={0}
-          error={backwards ? 'It ends before it begins.' : undefined}
         />
-      )}
-      <Field
-        label="Reason"
-        value={reason}
-        multiline
-        lines={2}
-        maxLength={300}
-        onChangeText={(text) => change({ reason: text })}
-      />
-      {problem ? (
-        <Txt tone="alarm" bold role="alert">
-          {problem}
-        </Txt>
-      ) : null}
+        {draft.value.to === null ? (
+          <Txt tone="ink2">It waits still. It ends by itself when its charge is ready.</Txt>
+        ) : (
+          <DateTimeField
+            label="To"
+            dayLabel="Day it ended"
+            value={draft.value.to}
+            onChange={(value) => change({ to: value })}
+            today={today}
+            from={earliest}
+            to={0}
+            error={backwards ? 'It ends before it begins.' : undefined}
+          />
+        )}
+        <Field
+          label="Reason"
+          value={reason}
+          multiline
+          lines={2}
+          maxLength={300}
+          onChangeText={(text) => change({ reason: text })}
+        />
+        {problem ? (
+          <Txt tone="alarm" bold role="alert">
+            {problem}
+          </Txt>
+        ) : null}
+      </SheetFields>
     </ConfirmSheet>
   );
 }

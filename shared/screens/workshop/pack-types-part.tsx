@@ -1,9 +1,11 @@
 import { useGate } from '@/shared/client/gate';
 import { usePackTypes } from '@/shared/client/pack-types';
 import { partState } from '@/shared/client/part-state';
+import { useFormats } from '@/shared/ui/format/formats';
 import { Link } from '@/shared/ui/primitives/link';
 import { Searched } from '@/shared/ui/primitives/searched';
 import { Table } from '@/shared/ui/primitives/table';
+import { aimWords } from '@/shared/ui/repair/pack-form';
 import { packWords } from '@/shared/ui/repair/repair-words';
 import { whoMay } from '@/shared/ui/workshop/may-change';
 import { SectionBlock } from '@/shared/ui/workshop/section-block';
@@ -15,6 +17,7 @@ import { useGo } from './use-go';
 /** The workshop's own templates of packs. */
 export function PackTypesPart({ titled }: PartProps) {
   const go = useGo();
+  const { marks } = useFormats();
   const gate = useGate('equipment:write');
   const types = usePackTypes();
   return (
@@ -57,6 +60,7 @@ export function PackTypesPart({ titled }: PartProps) {
                   cell: ({ pack }) => pack.moduleTypeName ?? 'not known',
                   tone: 'ink2',
                 },
+                { key: 'aim', title: 'Aim', cell: ({ pack }) => aimWords(pack, marks), tone: 'ink2' },
                 {
                   key: 'edit',
                   title: 'Change',

@@ -8,7 +8,7 @@ import { Txt } from '../primitives/txt';
 import { useTheme } from '../theme/theme';
 import { faceStacks } from '../theme/tokens';
 import { layoutBars, type WaitBar } from './bar-layout';
-import { Grid } from './charge-picture';
+import { Grid } from './grid';
 
 export interface BarChartProps {
   bars: readonly WaitBar[];

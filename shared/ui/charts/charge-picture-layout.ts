@@ -5,6 +5,7 @@ import { fixed } from '../format/number';
 import type { ColorRole } from '../theme/tokens';
 import { combSlats } from '../wait-ribbon/comb';
 import { fromZero, lineDecimals, voltLines } from './axis-steps';
+import type { GridLine } from './grid';
 
 export interface PictureReading {
   s: number;
@@ -29,11 +30,6 @@ export interface PictureInput {
   ampsHeight: number;
   /** Decimal mark of the axis. */
   marks?: LocaleMarks;
-}
-
-export interface GridLine {
-  y: number;
-  text: string;
 }
 
 export interface PictureDrawing {

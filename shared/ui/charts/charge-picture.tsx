@@ -7,7 +7,8 @@ import { useHalo } from '../theme/surface';
 import { useTheme } from '../theme/theme';
 import { faceStacks } from '../theme/tokens';
 import type { Tick } from '../wait-ribbon/ticks';
-import { layoutPicture, type GridLine, type PictureInput } from './charge-picture-layout';
+import { layoutPicture, type PictureInput } from './charge-picture-layout';
+import { Grid } from './grid';
 
 export interface ChargePictureProps extends Omit<PictureInput, 'voltsHeight' | 'ampsHeight'> {
   voltsHeight?: number;
@@ -82,30 +83,6 @@ export function ChargePicture({ ticks, twin, voltsHeight = 150, ampsHeight = 66,
         );
       })}
     </Svg>
-  );
-}
-
-/** Hairlines with their number at the left. */
-export function Grid({ lines, left, width }: { lines: readonly GridLine[]; left: number; width: number }) {
-  const { colors } = useTheme();
-  return (
-    <>
-      {lines.map(({ y, text }) => (
-        <G key={text}>
-          <Path d={`M${left} ${y}H${width}`} stroke={colors.line} strokeWidth={1} />
-          <SvgText
-            x={left - 7}
-            y={y + 4}
-            textAnchor="end"
-            fill={colors.ink2}
-            fontFamily={faceStacks.text}
-            fontSize={13}
-          >
-            {text}
-          </SvgText>
-        </G>
-      ))}
-    </>
   );
 }
 

@@ -52,6 +52,21 @@ export const share = (value: number): string => withUnit(fixed(value * 100, 0), 
 /** A range with one unit: '10–45 °C'. */
 export const range = (low: string, high: string, unit: string): string => withUnit(`${low}${EN_DASH}${high}`, unit);
 
+/** A range in whole numbers: '6–14'; ends that round to the same number: '6'. */
+export function wholeRange(low: number, high: number): string {
+  const [from, to] = [fixed(low, 0), fixed(high, 0)];
+  return from === to ? from : `${from}${EN_DASH}${to}`;
+}
+/** Likely first, and the band where it has a width: '7 mV (5–9)', '8 mV' */
+export const millivoltsWithBand = ({ p10, p50, p90 }: { p10: number; p50: number; p90: number }): string =>
+  `${millivolts(p50)}${bandBeside(p50 * 1000, p10 * 1000, p90 * 1000)}`;
+
+/** The band in whole numbers behind its middle, ' (5–9)'; '' where it is no wider than the middle itself. */
+export function bandBeside(likely: number, low: number, high: number): string {
+  const range = wholeRange(low, high);
+  return range === fixed(likely, 0) ? '' : ` (${range})`;
+}
+
 /** A power: '1.2 kW', '640 W'. */
 export const watts = (value: number, marks: LocaleMarks = pointMarks): string =>
   Math.abs(value) >= 1000 ? withUnit(fixed(value / 1000, 1, marks), 'kW') : withUnit(fixed(value, 0, marks), 'W');

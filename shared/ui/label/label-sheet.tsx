@@ -1,8 +1,8 @@
 import { useMemo } from 'react';
 import { G, Path, Rect, Svg, Text as SvgText } from 'react-native-svg';
+import { labelSize, layoutLabel, type LabelInput } from '@/shared/contract/label-layout';
 import { faceStacks } from '../theme/tokens';
 import { qrPath } from '../wall/qr-code';
-import { labelSize, layoutLabel, type LabelInput } from './label-layout';
 
 // Thermal paper knows two colours in every theme.
 const paper = 'white';

@@ -1,16 +1,14 @@
 /** What the readings after the fit prove, in words. Pure. */
-import type { PackReadingDto } from '@/shared/contract/pack-reading';
+import type { PackDto } from '@/shared/contract/pack';
+import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading';
 import type { BalanceForecastDto, RepairDto } from '@/shared/contract/repair';
-import { EN_DASH } from '../format/marks';
-import { millivolts } from '../format/quantities';
+import { NBSP, type LocaleMarks } from '../format/marks';
+import { shortest } from '../format/number';
+import { bandBeside, millivolts, wholeRange } from '../format/quantities';
 
 /** Readings that count, the first first. */
 export const spreadLog = (readings: readonly PackReadingDto[]): PackReadingDto[] =>
   readings.filter(({ setAside }) => setAside === null).sort((a, b) => Date.parse(a.at) - Date.parse(b.at));
-
-/** 'Arrival', 'After the fit', 'Balance charge 2' */
-export const stageWords = ({ stage, balanceCount }: Pick<PackReadingDto, 'stage' | 'balanceCount'>): string =>
-  stage === 'arrival' ? 'Arrival' : stage === 'after-fit' ? 'After the fit' : `Balance charge ${balanceCount ?? 1}`;
 
 /** The reading after the fit against what was expected of it; null: one of the two is missing. */
 export function fitVerdict(
@@ -20,9 +18,8 @@ export function fitVerdict(
   const fit = log.filter(({ stage }) => stage === 'after-fit').at(-1);
   if (!fit || !expected) return null;
   const spread = fit.spreadMillivolts;
-  const [low, high] = [Math.round(expected.low), Math.round(expected.high)];
-  const band = `${low === high ? '' : `${low}${EN_DASH}`}${millivolts(high / 1000)}`;
-  const said = `${millivolts(spread / 1000)} after the fit, ${band} expected`;
+  const band = wholeRange(expected.low, expected.high);
+  const said = `${millivolts(spread / 1000)} after the fit, ${band}${NBSP}mV expected`;
   if (spread > expected.high)
     return {
       good: false,
@@ -42,6 +39,58 @@ const notConverging: Record<NonNullable<BalanceForecastDto['doesNotConverge']>, 
 export function forecastWords(forecast: BalanceForecastDto): { converges: boolean; text: string } {
   if (forecast.doesNotConverge) return { converges: false, text: notConverging[forecast.doesNotConverge] };
   if (!forecast.charges) return { converges: true, text: 'not known yet' };
-  const [low, likely, high] = [forecast.charges.p10, forecast.charges.p50, forecast.charges.p90].map(Math.round);
-  return { converges: true, text: low === high ? String(likely) : `${likely} (${low}${EN_DASH}${high})` };
+  const { p10, p50, p90 } = forecast.charges;
+  return { converges: true, text: `${Math.round(p50)}${bandBeside(p50, p10, p90)}` };
+}
+
+/** Where the forecast comes from, and what one balance charge is taken as; null: nothing is forecast. */
+export function forecastFrom(
+  { from, charges, hoursPerCharge }: BalanceForecastDto,
+  { bleedAmps }: Pick<PackDto, 'bleedAmps'>,
+  marks: LocaleMarks,
+): string | null {
+  if (from === null || !charges || charges.p90 === 0) return null;
+  const bleed =
+    bleedAmps === null ? 'the usual bleed current' : `a bleed current of ${shortest(bleedAmps, 3, marks)}${NBSP}A`;
+  const by = { bleed, log: 'what the last ones took off', both: `${bleed} and what the last ones took off` }[from];
+  return `By ${by}, each with ${hoursPerCharge}${NBSP}h on the charger.`;
+}
+
+/** One bar of the picture. */
+export interface SpreadBar {
+  key: string;
+  /** 'Balance charge 2' */
+  name: string;
+  /** 'bal. 2' */
+  short: string;
+  /** When it was read, an instant; null: it is expected. */
+  at: string | null;
+  /** mV; of what was read all three alike. */
+  spread: { p10: number; p50: number; p90: number };
+}
+
+const shortName = ({ stage, balanceCount }: Pick<PackReadingDto, 'stage' | 'balanceCount'>): string =>
+  stage === 'arrival' ? 'arrival' : stage === 'after-fit' ? 'fit' : `bal. ${balanceCount ?? 1}`;
+
+/** Further balance charges than these are a count, no picture. */
+const MOST_EXPECTED = 5;
+
+/** What was read, the first first, then what is expected after each of the next balance charges. */
+export function spreadBars(log: readonly PackReadingDto[], forecast: BalanceForecastDto | null): SpreadBar[] {
+  const read = log.map((reading): SpreadBar => {
+    const { id, at, spreadMillivolts: mv } = reading;
+    return {
+      key: id,
+      name: readingName(reading),
+      short: shortName(reading),
+      at,
+      spread: { p10: mv, p50: mv, p90: mv },
+    };
+  });
+  const count = Math.max(0, ...log.map(({ balanceCount }) => balanceCount ?? 0));
+  const expected = (forecast?.expectedMillivolts ?? []).slice(0, MOST_EXPECTED).map((spread, place): SpreadBar => {
+    const next = { stage: 'after-balance', balanceCount: count + place + 1 } as const;
+    return { key: `expected ${place}`, name: readingName(next), short: shortName(next), at: null, spread };
+  });
+  return [...read, ...expected];
 }

@@ -1,11 +1,8 @@
 /** What the second source says, in words, while it is typed. Pure. */
 import { compareSources } from '@/calc/pack/compare-sources';
 import { groupsAt, type PackInput } from '@/shared/contract/pack';
-import type { PackReadingDto } from '@/shared/contract/pack-reading';
+import { SOURCE_TOLERANCE_VOLTS, type PackReadingDto } from '@/shared/contract/pack-reading';
 import { millivolts } from '../format/quantities';
-
-/** What two instruments may show differently at one group once their offset is off, V: as the server judges. Common practice. */
-const TOLERANCE_VOLTS = 0.01;
 
 export interface SourceTyped {
   modulePosition: string;
@@ -55,7 +52,7 @@ export function sourceVerdict(
     packVolts: [...reading.groupVolts],
     oddModule: groups,
     meterGroups: [...read, ...healthy],
-    toleranceVolts: TOLERANCE_VOLTS,
+    toleranceVolts: SOURCE_TOLERANCE_VOLTS,
   });
   if (found.verdict === 'agree') return { agrees: true, text: `The meter agrees with the pack at module ${position}.` };
   const apart = found.groups

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { View } from 'react-native';
 import type { ChemistryId } from '@/calc/plan-types';
 import type { MeterDto } from '@/shared/contract/equipment';
@@ -21,6 +21,7 @@ export function PlanFields({
   today,
   toleranceHint,
   chemistry,
+  scan,
   onChange,
   onLeave,
 }: {
@@ -33,6 +34,8 @@ export function PlanFields({
   toleranceHint: string;
   /** Of the chosen spare; null while it is not known. */
   chemistry: ChemistryId | null;
+  /** Scans the label of the spare. */
+  scan?: ReactNode;
   onChange: (change: Partial<PlanTyped>) => void;
   onLeave: (field: PlanField) => void;
 }) {
@@ -60,6 +63,7 @@ export function PlanFields({
         onChange={(spareId) => onChange({ spareId })}
         onLeave={() => onLeave('spareId')}
       />
+      {scan}
       {flat ? (
         <SegmentSwitch
           label="The pack is told by"

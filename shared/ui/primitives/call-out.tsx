@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
 import { StyleSheet, View, type StyleProp, type ViewStyle } from 'react-native';
+import { standingLine } from '@/shared/contract/standing-line';
 import { StageGlyph } from '../stage/stage-glyph';
 import { innerFrame } from '../theme/frame';
 import { Surface } from '../theme/surface';
@@ -51,9 +52,7 @@ export function Caution({ children, style }: { children: ReactNode; style?: Styl
 
 /** The sentence that stands on every plan and sheet. */
 export const StandingLine = ({ style }: { style?: StyleProp<ViewStyle> }) => (
-  <Caution style={style}>
-    An aid to trained people. The maker’s limits, your risk assessment and local codes come first.
-  </Caution>
+  <Caution style={style}>{standingLine}</Caution>
 );
 
 const styles = StyleSheet.create({

@@ -37,7 +37,7 @@ export function CandidateRow({
 }) {
   const styles = useStyles();
   const { zone, marks } = useFormats();
-  const { label, groupVolts, seconds, problems, ruledOut, reservedFor, agreement } = candidate;
+  const { label, groupVolts, seconds, needsCharge, problems, ruledOut, reservedFor, agreement } = candidate;
   const elsewhere = reservedFor !== null && !chosen;
   const lowest = groupVolts === null || groupVolts.length === 0 ? null : Math.min(...groupVolts);
   return (
@@ -57,7 +57,11 @@ export function CandidateRow({
         <View style={styles.words}>
           <Txt kind="numS">{label}</Txt>
           <Txt bold={!ruledOut} tone={ruledOut ? 'ink3' : 'ink'}>
-            {ruledOut || seconds === null ? 'Cannot be brought to the target' : durationWithBand(seconds)}
+            {ruledOut || seconds === null
+              ? 'Cannot be brought to the target'
+              : needsCharge
+                ? durationWithBand(seconds)
+                : 'Within the tolerance: no charge needed'}
           </Txt>
           <Txt kind="small" tone="ink2">
             {[

@@ -27,7 +27,7 @@ export function EventsPart({ events, now }: { events: readonly RepairEventDto[];
       <View role="list">
         {shown.map((event) => (
           <View key={event.id} role="listitem" style={styles.row}>
-            <Txt kind="numXS" nowrap style={styles.time}>
+            <Txt kind="numXS" nowrap style={marks.hour12 ? styles.twelve : styles.time}>
               {moment(Date.parse(event.at), zone, now, marks)}
             </Txt>
             <Txt nowrap style={styles.who} numberOfLines={1}>
@@ -55,7 +55,9 @@ const useStyles = makeStyles(({ colors }) => ({
     borderTopWidth: 1,
     borderTopColor: colors.line,
   },
-  time: { minWidth: 84 },
+  // 'Mon 12:53' and 'Mon 12:53 pm': the names stand under each other with either clock.
+  time: { width: 84 },
+  twelve: { width: 106 },
   who: { width: 64 },
   words: { flex: 1, minWidth: 0 },
 }));

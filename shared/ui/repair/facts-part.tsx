@@ -3,9 +3,11 @@ import type { RepairDto } from '@/shared/contract/repair';
 import { firstName } from '../charge/card-model';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
-import { celsius, tolerance, volts } from '../format/quantities';
+import { NBSP } from '../format/marks';
+import { celsius, millivolts, tolerance, volts } from '../format/quantities';
 import { FactList, type Fact } from '../primitives/fact-list';
 import { Txt } from '../primitives/txt';
+import { typedNumber } from '../workshop/numbers-typed';
 import { packWords, standing } from './repair-words';
 
 /** What was booked, and what is known of the pack. */
@@ -23,6 +25,12 @@ export function FactsPart({ repair, now }: { repair: RepairDto; now: number }) {
     ...(repair.failing ? [{ name: 'Failing', value: `module ${repair.failing}` }] : []),
     ...(repair.pack.moduleTypeName ? [{ name: 'Module type', value: repair.pack.moduleTypeName }] : []),
     { name: 'Pack', value: <Txt align="right">{repair.packTypeName ?? packWords(repair.pack)}</Txt> },
+    {
+      name: 'Aim after the fit',
+      value: millivolts(repair.pack.aimMillivolts / 1000),
+      note:
+        repair.pack.bleedAmps === null ? undefined : `bleeds ${typedNumber(repair.pack.bleedAmps, 0, marks)}${NBSP}A`,
+    },
     ...(warm === null ? [] : [{ name: 'Pack at', value: celsius(warm) }]),
     ...(repair.target
       ? [

@@ -1,11 +1,12 @@
 import { useWatch, type FieldPath, type FieldValues, type PathValue } from 'react-hook-form';
 import { View } from 'react-native';
 import type { ModuleTypeDto } from '@/shared/contract/equipment';
+import { USUAL_AIM_MILLIVOLTS } from '@/shared/contract/pack';
 import { BoundField, BoundSelect, type TypedForm } from '../forms/bound';
 import { Txt } from '../primitives/txt';
 import { mapHint, type PackTyped } from './pack-form';
 
-/** The numbers of a pack: module type, groups, groups per module, and where the groups sit. */
+/** The numbers of a pack: module type, groups, groups per module, where the groups sit, and what it balances with. */
 export function PackFields<V extends FieldValues & { pack: PackTyped }>({
   form,
   types,
@@ -72,6 +73,26 @@ export function PackFields<V extends FieldValues & { pack: PackTyped }>({
           {mapHint(pack)}
         </Txt>
       ) : null}
+      <BoundField
+        form={form}
+        name={at('bleedAmps')}
+        label="Bleed current"
+        kind="decimal"
+        unit="A"
+        readOnly={readOnly}
+        hint="of the pack’s own balancing; left empty: the usual 0.1 to 0.2 A"
+        nextKey="next"
+      />
+      <BoundField
+        form={form}
+        name={at('aimMillivolts')}
+        label="Aim after the fit"
+        kind="whole"
+        unit="mV"
+        readOnly={readOnly}
+        hint={`the spread that proves a repair; left empty: ${USUAL_AIM_MILLIVOLTS} mV`}
+        nextKey="next"
+      />
     </View>
   );
 }

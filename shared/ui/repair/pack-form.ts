@@ -1,5 +1,8 @@
 /** The numbers of a pack as they are typed. Pure. */
-import type { PackDto } from '@/shared/contract/pack';
+import { USUAL_AIM_MILLIVOLTS, type PackDto } from '@/shared/contract/pack';
+import { NBSP, pointMarks, type LocaleMarks } from '../format/marks';
+import { millivolts } from '../format/quantities';
+import { typedNumber } from '../workshop/numbers-typed';
 
 export interface PackTyped {
   /** Empty: not known. */
@@ -8,15 +11,24 @@ export interface PackTyped {
   groupsPerModule: string;
   /** 'A module for each group, in their order: 1, 1, 2, 2'; empty: they follow each other. */
   positionOfGroup: string;
+  /** A; empty: nobody knows it. */
+  bleedAmps: string;
+  /** mV. */
+  aimMillivolts: string;
 }
 
-export const emptyPack: PackTyped = { moduleTypeId: '', groupCount: '', groupsPerModule: '', positionOfGroup: '' };
+export const emptyPack: PackTyped = {
+  ...{ moduleTypeId: '', groupCount: '', groupsPerModule: '', positionOfGroup: '', bleedAmps: '' },
+  aimMillivolts: String(USUAL_AIM_MILLIVOLTS),
+};
 
-export const packTexts = (pack: PackDto): PackTyped => ({
+export const packTexts = (pack: PackDto, marks: LocaleMarks = pointMarks): PackTyped => ({
   moduleTypeId: pack.moduleTypeId ?? '',
   groupCount: String(pack.groupCount),
   groupsPerModule: String(pack.groupsPerModule),
   positionOfGroup: pack.positionOfGroup?.join(', ') ?? '',
+  bleedAmps: typedNumber(pack.bleedAmps, 0, marks),
+  aimMillivolts: typedNumber(pack.aimMillivolts, 0, marks),
 });
 
 /**
@@ -40,4 +52,10 @@ export const packTypedOf = (typed: PackTyped): unknown => ({
 export function mapHint({ groupCount, positionOfGroup }: PackTyped): string | null {
   const typed = positionsTyped(positionOfGroup)?.length ?? 0;
   return typed === 0 ? null : `${typed} of ${groupCount.trim() || '?'} groups have a position.`;
+}
+
+/** 'Aim 10 mV, bleed current 0.15 A' */
+export function aimWords({ aimMillivolts, bleedAmps }: PackDto, marks: LocaleMarks = pointMarks): string {
+  const bleed = bleedAmps === null ? '' : `, bleed current ${typedNumber(bleedAmps, 0, marks)}${NBSP}A`;
+  return `Aim ${millivolts(aimMillivolts / 1000)}${bleed}`;
 }

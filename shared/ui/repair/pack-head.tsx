@@ -1,6 +1,6 @@
 import { View } from 'react-native';
 import { positionsOf } from '@/shared/contract/pack';
-import type { PackReadingDto } from '@/shared/contract/pack-reading';
+import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading';
 import type { RepairDto } from '@/shared/contract/repair';
 import { firstName } from '../charge/card-model';
 import { moment } from '../format/clock';
@@ -10,7 +10,6 @@ import { PackPicture } from '../pack-picture/pack-picture';
 import { Num } from '../primitives/num';
 import { Txt } from '../primitives/txt';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { readingName } from './repair-words';
 
 /** A reading of the pack: spread, median and odd groups large, when and by whom, and the picture. */
 export function PackHead({ reading, pack, now }: { reading: PackReadingDto; pack: RepairDto['pack']; now: number }) {

@@ -1,6 +1,7 @@
 /** A template of a pack as it is typed. Pure. */
 import * as z from 'zod/mini';
 import { packTypeSchema, type PackTypeDto } from '@/shared/contract/pack';
+import type { LocaleMarks } from '../format/marks';
 import { emptyPack, packTexts, packTypedOf, type PackTyped } from './pack-form';
 
 export interface PackTypeTyped {
@@ -10,9 +11,9 @@ export interface PackTypeTyped {
   baseRev: number;
 }
 
-export const packTypeTexts = (of: PackTypeDto | null): PackTypeTyped => ({
+export const packTypeTexts = (of: PackTypeDto | null, marks: LocaleMarks): PackTypeTyped => ({
   name: of?.name ?? '',
-  pack: of ? packTexts(of.pack) : emptyPack,
+  pack: of ? packTexts(of.pack, marks) : emptyPack,
   note: of?.note ?? '',
   baseRev: of?.rev ?? 0,
 });
@@ -30,6 +31,8 @@ export const packTypeNames = {
   groups: 'Groups',
   perModule: 'Groups per module',
   positions: 'Module of each group',
+  bleed: 'Bleed current',
+  aim: 'Aim after the fit',
   note: 'Note',
 } as const;
 
@@ -39,5 +42,7 @@ export const flatPackType = ({ name, pack, note }: PackTypeTyped): Record<string
   groups: pack.groupCount,
   perModule: pack.groupsPerModule,
   positions: pack.positionOfGroup,
+  bleed: pack.bleedAmps,
+  aim: pack.aimMillivolts,
   note,
 });

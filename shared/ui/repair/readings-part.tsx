@@ -1,13 +1,12 @@
 import { View } from 'react-native';
-import type { PackReadingDto } from '@/shared/contract/pack-reading';
+import { readingName, type PackReadingDto } from '@/shared/contract/pack-reading';
 import type { RepairDto } from '@/shared/contract/repair';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
-import { ampHours, millivolts } from '../format/quantities';
+import { ampHours, bandBeside, millivolts, millivoltsWithBand } from '../format/quantities';
 import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
-import { readingName } from './repair-words';
 
 const changeWords: Record<NonNullable<PackReadingDto['change']>['kind'], string> = {
   exchange: 'the exchange',
@@ -97,21 +96,15 @@ export function ReadingsPart({
       ) : null}
       {expected ? (
         <Txt kind="small" tone="ink2">
-          {`Expected after the fit: ${millivolts(expected.likely / 1000)} (${bandWords(expected.low, expected.high)} mV)${forecast?.charges ? `, then ${balanceWords(forecast.charges)}` : ''}.`}
+          {`Expected after the fit: ${millivoltsWithBand({ p10: expected.low / 1000, p50: expected.likely / 1000, p90: expected.high / 1000 })}${forecast?.charges ? `, then ${balanceWords(forecast.charges)}` : ''}.`}
         </Txt>
       ) : null}
     </View>
   );
 }
 
-/** '1 balance charge (1–2)' */
+/** '1 balance charge (1–2)', '1 balance charge' */
 export function balanceWords({ p10, p50, p90 }: NonNullable<NonNullable<RepairDto['forecast']>['charges']>): string {
   const likely = Math.round(p50);
-  return `${likely} balance ${likely === 1 ? 'charge' : 'charges'} (${bandWords(p10, p90)})`;
-}
-
-/** '6–14'; rounded to one and the same: that one. */
-function bandWords(low: number, high: number): string {
-  const [from, to] = [Math.round(low), Math.round(high)];
-  return from === to ? String(to) : `${from}–${to}`;
+  return `${likely} balance ${likely === 1 ? 'charge' : 'charges'}${bandBeside(p50, p10, p90)}`;
 }

@@ -4,13 +4,14 @@ import type { ModuleTypeDto } from '@/shared/contract/equipment';
 import type { PackTypeDto } from '@/shared/contract/pack';
 import { fieldSentence } from '@/shared/contract/field-sentence';
 import { daysBetween } from '../format/zone';
+import { useFormats } from '../format/formats';
 import { BoundField } from '../forms/bound';
 import { ChoiceRow } from '../primitives/choice-row';
 import { DateTimeField } from '../primitives/date-time-field';
 import { Select } from '../primitives/select';
 import { Txt } from '../primitives/txt';
 import { PackFields } from './pack-fields';
-import { packTexts } from './pack-form';
+import { aimWords, packTexts } from './pack-form';
 import type { RepairTyped } from './repair-form';
 import { packWords } from './repair-words';
 
@@ -67,12 +68,13 @@ function PackChoice({
   moduleTypes,
   fixedCount,
 }: Pick<RepairFieldsProps, 'form' | 'packTypes' | 'moduleTypes' | 'fixedCount'>) {
+  const { marks } = useFormats();
   const packTypeId = useWatch({ control: form.control, name: 'packTypeId' });
   const chosen = packTypes.find(({ id }) => id === packTypeId);
   const choose = (id: string) => {
     const type = packTypes.find((one) => one.id === id);
     form.setValue('packTypeId', type ? type.id : '', { shouldDirty: true });
-    if (type) form.setValue('pack', packTexts(type.pack), { shouldDirty: true });
+    if (type) form.setValue('pack', packTexts(type.pack, marks), { shouldDirty: true });
     form.clearErrors('pack');
   };
   return (
@@ -93,7 +95,9 @@ function PackChoice({
       ) : null}
       {chosen ? (
         <Txt tone="ink2">
-          {[packWords(chosen.pack), chosen.pack.moduleTypeName, chosen.note].filter(Boolean).join(' · ')}
+          {[packWords(chosen.pack), chosen.pack.moduleTypeName, aimWords(chosen.pack, marks), chosen.note]
+            .filter(Boolean)
+            .join(' · ')}
         </Txt>
       ) : (
         <PackFields form={form} types={moduleTypes} fixedCount={fixedCount} />

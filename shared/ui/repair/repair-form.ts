@@ -1,6 +1,7 @@
 /** A repair as it is typed. Pure; texts and choices, read by the contract's own schema. */
 import * as z from 'zod/mini';
 import { changeRepairSchema, repairSchema, type RepairDto } from '@/shared/contract/repair';
+import type { LocaleMarks } from '../format/marks';
 import { parseTimeOfDay, timeOfDayText } from '../format/parse';
 import { dayOf, instantOfDay, localTime } from '../format/zone';
 import type { DayAndTime } from '../primitives/date-time-field';
@@ -38,14 +39,14 @@ export const emptyRepair = (today: string, personId: string): RepairTyped => ({
   baseRev: 0,
 });
 
-export function repairTexts(repair: RepairDto, zone: string, today: string): RepairTyped {
+export function repairTexts(repair: RepairDto, zone: string, today: string, marks: LocaleMarks): RepairTyped {
   const promised = repair.promisedAt === null ? null : Date.parse(repair.promisedAt);
   const { hour, minute } = localTime(promised ?? 0, zone);
   return {
     number: repair.number,
     vehicle: repair.vehicle,
     packTypeId: repair.packTypeId ?? '',
-    pack: packTexts(repair.pack),
+    pack: packTexts(repair.pack, marks),
     customerName: repair.customerName ?? '',
     customerContact: repair.customerContact ?? '',
     promisedAt:
@@ -90,6 +91,8 @@ export const repairNames = {
   groups: 'Groups',
   perModule: 'Groups per module',
   positions: 'Module of each group',
+  bleed: 'Bleed current',
+  aim: 'Aim after the fit',
   note: 'Note',
 } as const;
 
@@ -104,5 +107,7 @@ export const flatTexts = (typed: RepairTyped, personName: (id: string) => string
   groups: typed.pack.groupCount,
   perModule: typed.pack.groupsPerModule,
   positions: typed.pack.positionOfGroup,
+  bleed: typed.pack.bleedAmps,
+  aim: typed.pack.aimMillivolts,
   note: typed.note,
 });

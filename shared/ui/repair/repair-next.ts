@@ -1,16 +1,16 @@
 /** The one thing to do next with a repair. Pure. */
-import type { RepairDto } from '@/shared/contract/repair';
+import type { RepairPageDto } from '@/shared/contract/repair';
 import { nextStep } from '../bench/next-step';
 import { planHref } from '../repair-spare/candidate-words';
 import { presentStep, standing } from './repair-words';
 
-export type RepairSheet = 'hand-over' | 'removed' | 'delete' | 'wait' | 'set-aside';
+export type RepairSheet = 'hand-over' | 'removed' | 'delete' | 'wait' | 'set-aside' | 'fit';
 export type RepairNext =
   | { kind: 'go'; title: string; path: string }
-  | { kind: 'hand-over' | 'archive' | 'unarchive' | 'restore'; title: string };
+  | { kind: 'hand-over' | 'removed' | 'fit' | 'archive' | 'unarchive' | 'restore'; title: string };
 
 /** @param mayDecide whether this person may decide between two sources */
-export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext {
+export function nextOfRepair(repair: RepairPageDto, mayDecide: boolean): RepairNext {
   if (repair.state === 'deleted') return { kind: 'restore', title: 'Bring it back' };
   if (repair.state === 'archived') return { kind: 'unarchive', title: 'Take it out of the archive' };
   if (repair.state === 'handed-over') return { kind: 'archive', title: 'Put it into the archive' };
@@ -19,6 +19,7 @@ export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext 
   const { block, charge } = repair;
   if (block?.code === 'sources-disagree')
     return go(mayDecide ? 'Decide which module it is' : 'Look at the two sources', `${page}/second-source`);
+  if (block?.code === 'module-condition') return { kind: 'removed', title: 'Record what became of the module' };
   if (block?.code === 'module-unknown') return go('Enter the second source', `${page}/second-source`);
   const step = presentStep(repair.steps)?.step ?? null;
   switch (step) {
@@ -32,6 +33,8 @@ export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext 
       return go('Choose a spare', `${page}/spares`);
     case 'charge': {
       if (!charge) {
+        const asItIs = nextAsItIs(repair);
+        if (asItIs) return asItIs;
         const plan = planHref(repair);
         return plan ? go('Plan a charge', plan) : go('Choose a spare', `${page}/spares`);
       }
@@ -49,4 +52,12 @@ export function nextOfRepair(repair: RepairDto, mayDecide: boolean): RepairNext 
     case null:
       return { kind: 'hand-over', title: 'Hand it over' };
   }
+}
+
+/** Of a reserved spare that rests within the tolerance: fitting it, or reading it once more; null: it needs a charge. */
+export function nextAsItIs({ spare, asItIs }: Pick<RepairPageDto, 'spare' | 'asItIs'>): RepairNext | null {
+  if (spare === null || asItIs === null) return null;
+  return asItIs.old
+    ? { kind: 'go', title: `Read ${spare.label} once more`, path: `/spares/${spare.id}/reading` }
+    : { kind: 'fit', title: `Fit ${spare.label} without a charge` };
 }

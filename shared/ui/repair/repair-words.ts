@@ -13,10 +13,6 @@ import { coming } from '../bench/bench-words';
 import { millivolts } from '../format/quantities';
 import { stages, type StageMark } from '../stage/stages';
 
-/** 'Arrival', 'After the fit', 'Balance charge 2' */
-export const readingName = ({ stage, balanceCount }: Pick<PackReadingDto, 'stage' | 'balanceCount'>): string =>
-  stage === 'arrival' ? 'Arrival' : stage === 'after-fit' ? 'After the fit' : `Balance charge ${balanceCount ?? 1}`;
-
 /** Readings that count, newest first. */
 export const standing = (readings: readonly PackReadingDto[]): PackReadingDto[] =>
   readings.filter(({ setAside }) => setAside === null).sort((a, b) => b.at.localeCompare(a.at));
@@ -34,6 +30,7 @@ export function packWords({ groupCount, moduleCount, groupsPerModule }: RepairDt
 
 const blockWords: Record<RepairBlock['code'], string> = {
   'sources-disagree': 'Must decide',
+  'module-condition': 'Look at a module',
   'module-unknown': 'No module found',
   'check-outside': 'Outside',
   'charge-odd': 'Odd readings',
@@ -112,4 +109,16 @@ export function sourceWords(source: SecondSourceDto): { title: string; agrees: b
   return decided.decision === 'module'
     ? { title: `${by} decided: module ${decided.modulePosition ?? ''}`, agrees: true }
     : { title: `${by} decided: the pack is read again`, agrees: false };
+}
+
+/** Position of the module that came out, where a spare is in and nobody has recorded what became of it; null: nothing is missing. */
+export function unrecorded({
+  steps,
+  failing,
+  removed,
+}: Pick<RepairDto, 'steps' | 'failing' | 'removed'>): string | null {
+  const fitted = steps.some(({ step, state }) => step === 'fit' && state === 'done');
+  return fitted && failing !== null && !removed.some(({ modulePosition }) => modulePosition === failing)
+    ? failing
+    : null;
 }

@@ -1,12 +1,16 @@
 import type { ReactNode } from 'react';
-import { View } from 'react-native';
+import { useWindowDimensions, View } from 'react-native';
 import { makeStyles } from '../theme/make-styles';
-import { widths } from '../theme/tokens';
+import { margin, widths } from '../theme/tokens';
 import { useBreakpoint } from '../theme/use-breakpoint';
 
+/** From this window on all three columns have their least width beside the rail, px. */
+const THREE_FROM = widths.rail + 2 * margin.wide + widths.facts + widths.workMin + widths.sideMin + 2 * widths.gap;
+
 /**
- * Two or three columns on the desk: facts 270, work 560–790 (to 960 on a large screen), side 292–340, gap 40. On
- * tablet and phone they stand under each other in `order`; the default puts the work first.
+ * Two or three columns on the desk: facts 270, work 560–790 (to 960 on a large screen), side 292–340, gap 40; where
+ * three have no room, the facts stand under the side. On tablet and phone all stand under each other in `order`; the
+ * default puts the work first.
  */
 export function Columns({
   facts,
@@ -21,6 +25,7 @@ export function Columns({
 }) {
   const styles = useStyles();
   const parts = { facts, work, side };
+  const three = useWindowDimensions().width >= THREE_FROM;
   if (useBreakpoint() !== 'wide') {
     return (
       <View style={styles.stack}>
@@ -28,6 +33,16 @@ export function Columns({
       </View>
     );
   }
+  if (facts && side && !three)
+    return (
+      <View style={styles.row}>
+        <View style={styles.work}>{work}</View>
+        <View style={[styles.side, styles.stack]}>
+          {side}
+          {facts}
+        </View>
+      </View>
+    );
   return (
     <View style={styles.row}>
       {facts ? <View style={styles.facts}>{facts}</View> : null}

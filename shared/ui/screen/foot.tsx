@@ -47,7 +47,7 @@ const useStyles = makeStyles(({ colors }) => ({
     borderTopColor: colors.line,
   },
   // On a wide screen the step stands under the one column, not across the page.
-  inside: { width: '100%', maxWidth: widths.single, marginHorizontal: 'auto' },
-  note: { marginBottom: 8 },
+  inside: { width: '100%', maxWidth: widths.single, marginHorizontal: 'auto', rowGap: touch.gap },
+  note: {},
   row: { flexDirection: 'row', columnGap: touch.gap },
 }));

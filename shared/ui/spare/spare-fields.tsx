@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import type { FieldPath, FieldValues, UseFormReturn } from 'react-hook-form';
 import { View } from 'react-native';
 import type { ModuleTypeDto } from '@/shared/contract/equipment';
@@ -15,11 +16,14 @@ export function SpareFields<Values extends FieldValues>({
   types,
   type,
   onType,
+  scan,
 }: {
   form: UseFormReturn<Values, unknown, Values>;
   types: readonly ModuleTypeDto[];
   type: ModuleTypeDto | undefined;
   onType?: (type: ModuleTypeDto) => void;
+  /** Scans the label into its field. */
+  scan?: ReactNode;
 }) {
   const { marks } = useFormats();
   const at = (name: string) => name as FieldPath<Values>;
@@ -34,6 +38,7 @@ export function SpareFields<Values extends FieldValues>({
           {(field) => <Field label="Shelf place" kind="label" maxLength={30} {...field} />}
         </TypedField>
       </FieldPair>
+      {scan}
       <TypedField form={form} name={at('moduleTypeId')} missing="Choose the type.">
         {({ value, onChange, onBlur, ref, error }) => (
           <Select

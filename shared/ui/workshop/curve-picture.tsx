@@ -2,7 +2,7 @@ import { useMemo } from 'react';
 import { View } from 'react-native';
 import { Circle, G, Path, Rect, Svg, Text as SvgText } from 'react-native-svg';
 import { voltsAtSoc } from '@/calc';
-import { Grid } from '../charts/charge-picture';
+import { Grid } from '../charts/grid';
 import { ChartFrame } from '../charts/chart-frame';
 import { useFormats } from '../format/formats';
 import { NBSP } from '../format/marks';

@@ -3,17 +3,20 @@ import { useFormats } from '../format/formats';
 import { EN_DASH, NBSP } from '../format/marks';
 import { FactList } from '../primitives/fact-list';
 import { typedNumber } from './numbers-typed';
-import { dayWords, limitFields, weekDays } from './settings-form';
+import { dayWords, limitFields, technicianDecidesName, weekDays } from './settings-form';
 
 /** The limits as they stand. */
 export function LimitFacts({ workshop }: { workshop: WorkshopDto }) {
   const { marks } = useFormats();
   return (
     <FactList
-      facts={limitFields.map(({ key, name, unit }) => ({
-        name,
-        value: `${key === 'toleranceMillivolts' ? '±' : ''}${typedNumber(workshop[key], 0, marks)}${NBSP}${unit}`,
-      }))}
+      facts={[
+        ...limitFields.map(({ key, name, unit }) => ({
+          name,
+          value: `${key === 'toleranceMillivolts' ? '±' : ''}${typedNumber(workshop[key], 0, marks)}${NBSP}${unit}`,
+        })),
+        { name: technicianDecidesName, value: workshop.technicianDecides === true ? 'yes' : 'no' },
+      ]}
     />
   );
 }

@@ -9,9 +9,10 @@ export interface LimitTexts {
   lookInMinutes: string;
   inrushLimitC: string;
   lagLimitMillivolts: string;
+  technicianDecides: boolean;
   baseRev: number;
 }
-export type LimitKey = Exclude<keyof LimitTexts, 'baseRev'>;
+export type LimitKey = Exclude<keyof LimitTexts, 'technicianDecides' | 'baseRev'>;
 
 export const limitFields: readonly { key: LimitKey; name: string; unit: string; whole?: boolean; meaning: string }[] = [
   {
@@ -42,16 +43,18 @@ export const limitFields: readonly { key: LimitKey; name: string; unit: string; 
   },
   { key: 'lagLimitMillivolts', name: 'Lag limit', unit: 'mV', meaning: 'a group this far behind the others is odd' },
 ];
-export const limitNames = Object.fromEntries(limitFields.map(({ key, name }) => [key, name])) as Record<
-  LimitKey,
-  string
->;
+export const technicianDecidesName = 'A technician may decide between two sources';
+export const limitNames: Readonly<Record<string, string>> = {
+  ...Object.fromEntries(limitFields.map(({ key, name }) => [key, name])),
+  technicianDecides: technicianDecidesName,
+};
 
 export const limitTexts = (workshop: WorkshopDto, marks: LocaleMarks): LimitTexts => ({
   ...(Object.fromEntries(limitFields.map(({ key }) => [key, typedNumber(workshop[key], 0, marks)])) as Record<
     LimitKey,
     string
   >),
+  technicianDecides: workshop.technicianDecides === true,
   baseRev: workshop.rev,
 });
 

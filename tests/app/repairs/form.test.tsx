@@ -30,6 +30,8 @@ const packType = {
     groupCount: 96,
     groupsPerModule: 2,
     positionOfGroup: null,
+    bleedAmps: 0.12,
+    aimMillivolts: 15,
     moduleTypeName: '2-series 66 Ah',
     moduleCount: 48,
   },
@@ -132,7 +134,14 @@ describe('the map of groups to modules', () => {
   ])('typed as %j is %j', (text, positions) => expect(positionsTyped(text)).toEqual(positions));
 
   it('says how many of the 4 groups have a position', () =>
-    expect(mapHint({ moduleTypeId: '', groupCount: '4', groupsPerModule: '2', positionOfGroup: '1, 1, 2' })).toBe(
-      '3 of 4 groups have a position.',
-    ));
+    expect(
+      mapHint({
+        moduleTypeId: '',
+        groupCount: '4',
+        groupsPerModule: '2',
+        positionOfGroup: '1, 1, 2',
+        bleedAmps: '',
+        aimMillivolts: '',
+      }),
+    ).toBe('3 of 4 groups have a position.'));
 });

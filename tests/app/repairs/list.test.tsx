@@ -86,11 +86,17 @@ describe('the list of repairs', () => {
   it('asks the server for what was typed, once the typing rests', async () => {
     const server = serverOf();
     server.answers['GET /api/repairs?q=silver'] = () => Response.json(listOf([open[2]!]));
+    server.answers['GET /api/search?q=silver'] = () => Response.json({ hits: [], more: false });
     draw(<Repairs />);
     await waitFor(() => expect(rows()).toHaveLength(3));
     fireEvent.change(screen.getByLabelText('Repair, vehicle, spare or person'), { target: { value: 'silver' } });
     await waitFor(() => expect(rows()).toEqual(['R-2425']));
-    expect(server.sent.filter(({ path }) => path.includes('q='))).toHaveLength(1);
+    await waitFor(() =>
+      expect(server.sent.map(({ path }) => path).filter((path) => path.includes('q='))).toEqual(
+        expect.arrayContaining(['/api/repairs?q=silver', '/api/search?q=silver']),
+      ),
+    );
+    expect(server.sent.filter(({ path }) => path.includes('q='))).toHaveLength(2);
   });
 
   it('brings the next page on demand', async () => {

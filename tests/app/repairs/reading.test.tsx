@@ -9,7 +9,7 @@ const gone = vi.fn();
 vi.mock('expo-router', async (original) => ({
   ...(await original<object>()),
   useLocalSearchParams: () => ({ id: 'r1' }),
-  useRouter: () => ({ canGoBack: () => false, replace: gone, push: vi.fn(), back: vi.fn() }),
+  useRouter: () => ({ canGoBack: () => false, replace: vi.fn(), dismissTo: gone, push: vi.fn(), back: vi.fn() }),
 }));
 
 let server: ReturnType<typeof fakeServer>;

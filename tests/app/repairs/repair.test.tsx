@@ -4,6 +4,7 @@ import Repair from '@/app/(workshop)/repairs/[id]/index';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import type { Role } from '@/shared/contract/roles';
 import { nextOfRepair } from '@/shared/ui/repair/repair-next';
+import { unrecorded } from '@/shared/ui/repair/repair-words';
 import { draw, emptyDevice, press } from '../charges/bench-of';
 import { card } from '../wall/cards';
 import { fakeServer, problem } from '../workshop/server';
@@ -143,6 +144,59 @@ describe('the page of a repair', () => {
   });
 });
 
+describe('the module that came out', () => {
+  it('is asked for once a spare is in, and is scrapped, set aside, put in stock or back in, with nothing preselected', async () => {
+    const server = serverOf(repairOf('prove'));
+    server.answers['POST /api/repairs/r1/removed'] = () => Response.json(repairOf('prove', { rev: 5 }));
+    draw(<Repair />);
+    expect(await screen.findByText('Module 17: nobody has recorded what became of it.')).toBeTruthy();
+    fireEvent.click(screen.getByRole('button', { name: 'Record what became of module 17' }));
+    const fates = within(await screen.findByRole('radiogroup', { name: 'What became of it' })).getAllByRole('radio');
+    expect(fates).toHaveLength(4);
+    expect(fates.map((one) => one.getAttribute('aria-checked'))).toEqual(['false', 'false', 'false', 'false']);
+    fireEvent.click(fates[1]!);
+    fireEvent.click(await press('Record it'));
+    await waitFor(() =>
+      expect(server.writes()).toMatchObject([
+        { path: '/api/repairs/r1/removed', body: { modulePosition: '17', fate: 'quarantine', note: null } },
+      ]),
+    );
+  });
+
+  it('is not asked for before the fit, nor once it is recorded', async () => {
+    const removed = [{ id: 'x1', modulePosition: '17', fate: 'scrap' as const, note: null }].map((one) => ({
+      ...one,
+      at: '2026-06-09T10:00:00.000Z',
+      by: { id: 'p2', name: 'Ines Marlow' },
+    }));
+    serverOf(repairOf('prove', { removed }));
+    draw(<Repair />);
+    expect(await screen.findByText('Module 17: scrapped')).toBeTruthy();
+    expect(screen.queryByText(/nobody has recorded/)).toBeNull();
+    expect(unrecorded(repairOf('fit'))).toBeNull();
+  });
+});
+
+describe('a repair that is over', () => {
+  it.each([
+    ['handed-over', 'Put it into the archive', 'archive', { archived: true }],
+    ['archived', 'Take it out of the archive', 'archive', { archived: false }],
+    ['deleted', 'Bring it back', 'restore', {}],
+  ] as const)('is %s, and a manager may: %s', async (over, title, to, body) => {
+    const server = serverOf(repairOf(null, { state: over, step: null }), 'manager');
+    server.answers[`POST /api/repairs/r1/${to}`] = () => Response.json(repairOf(null, { rev: 9 }));
+    draw(<Repair />);
+    fireEvent.click(await press(title));
+    await waitFor(() => expect(server.writes()).toMatchObject([{ path: `/api/repairs/r1/${to}`, body }]));
+  });
+
+  it('is not brought back by a technician, who reads who can', async () => {
+    serverOf(repairOf(null, { state: 'deleted', step: null }));
+    draw(<Repair />);
+    expect(await screen.findByText(/^Deleted repairs are brought back by a manager/)).toBeTruthy();
+  });
+});
+
 describe('the next thing to do', () => {
   const path = (repair: RepairPageDto, mayDecide = false) => {
     const next = nextOfRepair(repair, mayDecide);
@@ -164,6 +218,14 @@ describe('the next thing to do', () => {
     expect(path(repairOf('charge', { spare, target }))).toBe(
       '/plan?spare=s1&target=3.968&tolerance=5&repair=R-2418&position=17',
     );
+  });
+
+  it('with a spare within the tolerance is to fit it without a charge, or to read it once more where that is old', () => {
+    const target = { volts: 3.968, toleranceMillivolts: 5 } as RepairPageDto['target'];
+    const spare = { id: 's1', label: 'S-0417', shelfPlace: 'D3' };
+    const asItIs = { readAt: '2026-06-09T09:00:00.000Z', old: false };
+    expect(path(repairOf('charge', { spare, target, asItIs }))).toBe('fit');
+    expect(path(repairOf('charge', { spare, target, asItIs: { ...asItIs, old: true } }))).toBe('/spares/s1/reading');
   });
 
   it('of an open charge is that charge’s own', () => {

@@ -8,10 +8,11 @@ import { fakeServer } from '../workshop/server';
 import { reading, repairOf, source } from './read-repair-of';
 
 const gone = vi.fn();
+const replaced = vi.fn();
 vi.mock('expo-router', async (original) => ({
   ...(await original<object>()),
   useLocalSearchParams: () => ({ id: 'r1' }),
-  useRouter: () => ({ canGoBack: () => false, replace: gone, push: vi.fn(), back: vi.fn() }),
+  useRouter: () => ({ canGoBack: () => false, replace: replaced, dismissTo: gone, push: vi.fn(), back: vi.fn() }),
 }));
 
 let server: ReturnType<typeof fakeServer>;
@@ -21,6 +22,7 @@ const begin = (role: Role, repair: RepairPageDto) => {
   server = fakeServer(role);
   server.answers['GET /api/repairs/r1'] = () => Response.json(present);
   server.answers['GET /api/meters'] = () => Response.json(meters);
+  server.answers['GET /api/chargers'] = () => Response.json([{ id: 'c1', meterId: 'm1' }]);
   draw(<SecondSource />);
 };
 beforeEach(() => {
@@ -40,6 +42,10 @@ describe('measuring the suspected module', () => {
     expect(await screen.findByText('The meter agrees with the pack at module 2.')).toBeTruthy();
     await type('G3', '3,950');
     expect(await screen.findByText(/^The meter disagrees with the pack: G3 by 80.mV\.$/)).toBeTruthy();
+    // m1 is the display of a charger: it cannot read a module in the pack.
+    const offered = [...screen.getByLabelText<HTMLSelectElement>('Read with').options].map(({ value }) => value);
+    expect(offered).toContain('m2');
+    expect(offered).not.toContain('m1');
     fireEvent.change(screen.getByLabelText('Read with'), { target: { value: 'm2' } });
     server.answers['POST /api/repairs/r1/second-source'] = () => {
       present = repairOf({ readings: [reading()], sources: [source({ pointsTo: null })], rev: 4 });
@@ -102,5 +108,5 @@ describe('where the two disagree', () => {
 it('asks for the pack’s reading first where there is none', async () => {
   begin('technician', repairOf());
   fireEvent.click(await press('Enter the group voltages'));
-  expect(gone).toHaveBeenCalledWith('/repairs/r1/reading');
+  expect(replaced).toHaveBeenCalledWith('/repairs/r1/reading');
 });

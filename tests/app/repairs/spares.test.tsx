@@ -1,4 +1,4 @@
-import { fireEvent, screen, within } from '@testing-library/react';
+import { fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { afterEach, beforeEach, expect, it, vi } from 'vitest';
 import Spares from '@/app/(workshop)/repairs/[id]/spares';
 import type { TargetDto } from '@/shared/contract/pack-reading';
@@ -22,7 +22,7 @@ const target: TargetDto = {
 const candidate = (more: Partial<CandidateDto>): CandidateDto => ({
   ...{ spareId: 's1', label: 'S-0398', shelfPlace: 'D4', groupVolts: [3.655, 3.66], readAt: null, usedCapacityAh: 61 },
   ...{ capacitySource: 'measured', seconds: { p10: 11_700, p50: 13_200, p90: 15_900 }, channelName: 'A2' },
-  ...{ problems: [], ruledOut: false, reservedFor: null, agreement: null },
+  ...{ needsCharge: true, problems: [], ruledOut: false, reservedFor: null, agreement: null },
   ...more,
 });
 const list = [
@@ -96,4 +96,34 @@ it('asks for the target first where none is taken', async () => {
   draw(<Spares />);
   fireEvent.click(await press('Take the target'));
   expect(gone).toHaveBeenCalledWith('/repairs/r1/target');
+});
+
+it('says that 3.951 and 3.947 V need no charge for 3.950 V, and keeps the fit at the revision seen; old, it is read first', async () => {
+  const within = candidate({ needsCharge: false, groupVolts: [3.951, 3.947], seconds: { p10: 0, p50: 0, p90: 0 } });
+  server.answers['GET /api/repairs/r1/candidates'] = () => Response.json([within]);
+  const spare = { id: 's1', label: 'S-0398', shelfPlace: 'D4' };
+  present = repairOf({ ...present, spare, asItIs: { readAt: '2026-06-09T09:50:00.000Z', old: false } });
+  server.answers['POST /api/repairs/r1/fit'] = () => {
+    present = repairOf({ ...present, rev: 4, asItIs: null });
+    return Response.json(present);
+  };
+  draw(<Spares />);
+  expect((await row('S-0398')).getByText('Within the tolerance: no charge needed')).toBeTruthy();
+  expect(screen.queryByRole('button', { name: 'Plan a charge' })).toBeNull();
+  fireEvent.click(await press('Fit S-0398 without a charge'));
+  expect(
+    await screen.findByText(/^It rests within ±5.mV of 3\.950.V, .* It goes in as module 2, with your name/),
+  ).toBeTruthy();
+  expect(server.writes()).toEqual([]);
+  fireEvent.click(await press('It is fitted'));
+  await waitFor(() => expect(server.writes()).toMatchObject([{ path: '/api/repairs/r1/fit', body: { note: null } }]));
+  expect(server.writes()[0]!.rev).toContain('3');
+});
+
+it('asks to read a spare once more whose reading within the tolerance is old', async () => {
+  const spare = { id: 's1', label: 'S-0398', shelfPlace: 'D4' };
+  present = repairOf({ ...present, spare, asItIs: { readAt: '2026-06-05T09:50:00.000Z', old: true } });
+  draw(<Spares />);
+  fireEvent.click(await press('Read S-0398 once more'));
+  expect(gone).toHaveBeenCalledWith('/spares/s1/reading');
 });

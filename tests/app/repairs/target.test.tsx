@@ -7,10 +7,11 @@ import { fakeServer } from '../workshop/server';
 import { reading, repairOf, source } from './read-repair-of';
 
 const gone = vi.fn();
+const replaced = vi.fn();
 vi.mock('expo-router', async (original) => ({
   ...(await original<object>()),
   useLocalSearchParams: () => ({ id: 'r1' }),
-  useRouter: () => ({ canGoBack: () => false, replace: gone, push: vi.fn(), back: vi.fn() }),
+  useRouter: () => ({ canGoBack: () => false, replace: replaced, dismissTo: gone, push: vi.fn(), back: vi.fn() }),
 }));
 
 const computed: ComputedTargetDto = {
@@ -60,7 +61,7 @@ it('takes a typed target only with its reason', async () => {
 it('leads to a new reading where the present one is old', async () => {
   begin();
   fireEvent.click(await press('Read the pack again'));
-  expect(gone).toHaveBeenCalledWith('/repairs/r1/reading');
+  expect(replaced).toHaveBeenCalledWith('/repairs/r1/reading');
 });
 
 it('says the 12 mV that the meter reads above the pack on one healthy group', async () => {

@@ -115,10 +115,24 @@ describe('the limits of the workshop', () => {
     expect((await field('Look-in every')).value).toBe('45');
   });
 
+  it('lets a technician decide between two sources only once that is ticked, and saves it so', async () => {
+    open('manager');
+    server.answers['PATCH /api/workshop'] = () => Response.json({ ...workshop, technicianDecides: true, rev: 5 });
+    const tick = await screen.findByRole('checkbox', { name: /^A technician may decide between two sources/ });
+    expect(tick.getAttribute('aria-checked')).toBe('false');
+    fireEvent.click(tick);
+    save();
+    await waitFor(() => expect(router.back).toHaveBeenCalledOnce());
+    expect(server.writes()[0]?.body).toMatchObject({ technicianDecides: true, toleranceMillivolts: 5 });
+  });
+
   it('is for reading only to a technician, and says who may change it', async () => {
     open('technician');
     await screen.findByText('Changed by a manager. Here that is Hella Brandt.');
     expect((await field('Tolerance')).readOnly).toBe(true);
     expect(screen.queryByRole('button', { name: 'Save the limits' })).toBeNull();
+    const tick = screen.getByRole('checkbox', { name: /^A technician may decide/ });
+    fireEvent.click(tick);
+    expect(tick.getAttribute('aria-checked')).toBe('false');
   });
 });

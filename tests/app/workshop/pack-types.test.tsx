@@ -23,6 +23,8 @@ const pack = {
   groupCount: 6,
   groupsPerModule: 2,
   positionOfGroup: ['3 left', '3 left', '1', '1', '2', '2'],
+  bleedAmps: 0.15,
+  aimMillivolts: 12,
   moduleTypeName: null,
   moduleCount: 3,
 };
@@ -50,12 +52,16 @@ describe('a pack type', () => {
     expect(await screen.findByText(/6 groups need 6 positions; 5 were typed/)).toBeTruthy();
     expect(server.writes()).toEqual([]);
     await type(/^Module of each group/, '3 left, 3 left, 1, 1, 2, 2');
+    await type(/^Bleed current/, '0,12');
     fireEvent.click(await press('Save the pack type'));
     await waitFor(() => expect(state.back).toHaveBeenCalled());
     expect(server.writes()).toMatchObject([
       {
         path: '/api/pack-types',
-        body: { name: 'Van pack', pack: { groupCount: 6, positionOfGroup: pack.positionOfGroup } },
+        body: {
+          name: 'Van pack',
+          pack: { groupCount: 6, positionOfGroup: pack.positionOfGroup, bleedAmps: 0.12, aimMillivolts: 10 },
+        },
       },
     ]);
   });

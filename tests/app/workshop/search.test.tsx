@@ -79,6 +79,8 @@ const parts = [
         groupCount: 96,
         groupsPerModule: 2,
         positionOfGroup: null,
+        bleedAmps: null,
+        aimMillivolts: 10,
         moduleTypeName: null,
         moduleCount: 48,
       },

@@ -170,7 +170,7 @@ export interface Prediction {
 export function predict(log: LogCase, firstVolts: number, afterS: number, samples = 400): Prediction {
   const model = planModel(logPlanInput(log, firstVolts, samples));
   const nominal = runSample(log, model, model.nominal, firstVolts, afterS);
-  const totals = model.samples.map((sample) => runSample(log, model, sample, firstVolts, afterS).totalS);
+  const totals = model.samples().map((sample) => runSample(log, model, sample, firstVolts, afterS).totalS);
   return { ...nominal, totals: totals.sort((a, b) => a - b) };
 }
 

@@ -31,7 +31,7 @@ const comeAndGo = {
   tables: [
     'spare_capacity',
     ...['pack_type', 'repair', 'repair_person', 'pack_reading', 'second_source', 'removed_module', 'repair_wait'],
-    'repair_event',
+    ...['repair_event', 'advised_item', 'photo', 'fitted_spare'],
   ],
   columns: [
     ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],

@@ -4,7 +4,8 @@
  */
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from '@/tests/support/forms';
 import type { Furnished } from '@/tests/support/furnished';
-import { packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
+import { twoHalves } from '@/tests/support/pictures';
+import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
 
@@ -12,6 +13,8 @@ export interface Fit {
   /** Path parameters. */
   params?: Record<string, string>;
   body?: object;
+  /** What is uploaded, where the route takes a file. */
+  file?: Buffer;
   query?: string;
   /** Revision of what is changed; 1 where it is not said. */
   rev?: number;
@@ -45,6 +48,10 @@ const repair =
     body: body(f),
     rev: of === 'repairId' ? f.repairs.repairRev : f.repairs.waitingRev,
   });
+const jpeg = await twoHalves(40, 20).jpeg().toBuffer();
+const photo =
+  (body?: object) =>
+  (f: Furnished): Fit => ({ params: { id: f.repairs.photoId }, body });
 const resistor = { name: 'One more', ohm: '0.2', maxWatts: '25' };
 const meter = { name: 'One more', offsetMillivolts: '1', checkedAt: null };
 
@@ -192,6 +199,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { ...wish(f), optionId: f.optionId, topUpOf: f.chargeId, repairId: f.repairs.waitingRepairId },
   })),
   'GET /api/charges/:id': technician(charge()),
+  'GET /api/charges/:id/label.pdf': technician((f) => ({ params: { id: f.provenId } })),
   'DELETE /api/charges/:id': technician(charge()),
   'POST /api/charges/:id/checks': technician(charge(() => ({ code: 'isolation', answer: 'yes' }))),
   'POST /api/charges/:id/queue': technician(charge(() => ({ clipOnAt: null }))),
@@ -233,9 +241,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
     params: { id: f.repairs.repairId, readingId: f.repairs.packReadingId },
     body: { reason: 'Another pack.' },
   })),
-  'POST /api/repairs/:id/second-source': technician(
-    repair((f) => secondSourceForm(f.repairs.packReadingId, { meterId: f.meterId })),
-  ),
+  'POST /api/repairs/:id/second-source': technician(repair((f) => secondSourceForm(f.repairs.packReadingId))),
   'POST /api/repairs/:id/second-source/:sourceId/decision': foreman((f) => ({
     params: { id: f.repairs.repairId, sourceId: f.repairs.sourceId },
     body: { decision: 'module', modulePosition: '2', reason: 'Read at the busbar.' },
@@ -249,9 +255,25 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/repairs/:id/candidates': technician(repair(undefined, 'waitingRepairId')),
   'POST /api/repairs/:id/spare': technician(repair((f) => ({ spareId: f.spareId }), 'waitingRepairId')),
   'DELETE /api/repairs/:id/spare': technician(repair(undefined, 'waitingRepairId')),
+  'POST /api/repairs/:id/fit': technician((f) => ({
+    params: { id: f.repairs.waitingRepairId },
+    body: { note: '' },
+    rev: f.repairs.waitingRev,
+  })),
   'POST /api/repairs/:id/removed': technician(
     repair(() => ({ modulePosition: '2', fate: 'scrap', note: '' }), 'waitingRepairId'),
   ),
+  'POST /api/repairs/:id/advised': technician(repair(() => advisedForm())),
+  'PATCH /api/repairs/:id/advised/:itemId': technician((f) => ({
+    params: { id: f.repairs.waitingRepairId, itemId: f.repairs.advisedId },
+    body: advisedForm({ outcome: 'booked' }),
+    rev: f.repairs.waitingRev,
+  })),
+  'DELETE /api/repairs/:id/advised/:itemId': technician((f) => ({
+    params: { id: f.repairs.waitingRepairId, itemId: f.repairs.advisedId },
+    rev: f.repairs.waitingRev,
+  })),
+  'GET /api/repairs/:id/hand-over.pdf': technician(repair()),
   'POST /api/repairs/:id/hand-over': technician(repair(() => ({ note: 'Taken along unfinished.' }))),
   'POST /api/repairs/:id/archive': technician((f) => ({
     params: { id: f.repairs.handedOverId },
@@ -264,6 +286,20 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { from: '2026-06-09T09:00:00Z', to: null, reason: 'The lid was off earlier.' },
     rev: f.repairs.waitingRev,
   })),
+
+  'POST /api/repairs/:id/photos': technician((f) => ({ params: { id: f.repairs.repairId }, file: jpeg })),
+  'GET /api/photos/:id': technician(photo()),
+  'GET /api/photos/:id/thumbnail': technician(photo()),
+  'PATCH /api/photos/:id': technician(
+    photo({ caption: 'The lower edge', seen: 'damage', modulePosition: '2', spareId: null }),
+  ),
+  'DELETE /api/photos/:id': technician(photo()),
+
+  'GET /api/repairs.csv': foreman(),
+  'GET /api/repairs/:id/customer.json': manager(repair()),
+  'POST /api/repairs/:id/customer/erase': manager(repair(() => ({ reason: 'Asked for by the customer.' }))),
+
+  'GET /api/search': technician(() => ({ query: 'q=van' })),
 
   'GET /api/board': technician(),
   'GET /api/alerts': technician(),

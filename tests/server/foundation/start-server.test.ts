@@ -58,6 +58,17 @@ const workshop = {
 const mode = (file: string) => (fs.statSync(file).mode & 0o777).toString(8);
 
 describe('the first start', () => {
+  it('removes the file of a photo that a crash has left two hours before', async () => {
+    const folder = newFolder();
+    const left = path.join(folder, 'photos', `${'c'.repeat(32)}.jpg`);
+    fs.mkdirSync(path.dirname(left), { recursive: true });
+    fs.writeFileSync(left, 'picture');
+    const then = new Date(Date.now() - 2 * 3_600_000);
+    fs.utimesSync(left, then, then);
+    await start(folder);
+    expect(fs.existsSync(left)).toBe(false);
+  });
+
   it('makes the data folder, the secret for its owner only, the tables, and is ready', async () => {
     const folder = newFolder();
     const server = await start(folder);

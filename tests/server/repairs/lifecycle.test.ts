@@ -1,6 +1,6 @@
 import { afterEach, beforeEach, expect, test } from 'vitest';
-import { answered, at, did, hour, makeBench, minute, seen, type Bench } from '../charges/bench';
-import { arrival, levelled, makeShop, stripOf, strip, taken, type Shop } from './shop';
+import { did, hour, makeBench, minute, type Bench } from '../charges/bench';
+import { arrival, chargedAndChecked, levelled, makeShop, stripOf, strip, taken, type Shop } from './shop';
 
 let bench: Bench;
 let shop: Shop;
@@ -9,19 +9,6 @@ beforeEach(async () => {
   shop = makeShop(bench);
 });
 afterEach(() => bench.server.close());
-
-/** Lives through a charge until it waits for its check, and answers it in tolerance. */
-async function chargedAndChecked(chargeId: string) {
-  let charge = await did(bench, await answered(bench, await seen(bench, chargeId)), 'start');
-  await bench.live(at(charge.currentEndAt) - bench.server.clock.now() + 2 * minute);
-  charge = await did(bench, await seen(bench, chargeId), 'current-off');
-  await bench.live(at(charge.checkDueAt) - bench.server.clock.now() + minute);
-  return did(bench, await seen(bench, chargeId), 'rest-check', {
-    groupVolts: ['3.950', '3.948'],
-    celsius: 21,
-    meterId: bench.meterId,
-  });
-}
 
 test('the seven steps follow from what was done, and the wait goes from the target to the ready module', async () => {
   const spareId = await bench.spare('S-0417');
@@ -64,7 +51,7 @@ test('the seven steps follow from what was done, and the wait goes from the targ
   expect(page).toMatchObject({ step: 'charge', charge: { id: charge.id } });
   expect(stripOf(page)).toEqual(strip(4));
 
-  const checked = await chargedAndChecked(charge.id);
+  const checked = await chargedAndChecked(bench, charge.id);
   page = await shop.seen(page.id);
   expect(stripOf(page)).toEqual(strip(5));
   expect(page.steps[4]).toMatchObject({ at: checked.readyAt, by: { id: 'own-technician' } });
@@ -140,7 +127,7 @@ test('a plan that is dropped is told, the wait goes on; a ready module put back 
   expect(page.events[0]!.text).toBe('dropped the plan of S-0417');
   expect([page.charge, page.waits, page.wait.length]).toEqual([null, true, 1]);
 
-  const checked = await chargedAndChecked((await shop.plan(page, spareId)).id);
+  const checked = await chargedAndChecked(bench, (await shop.plan(page, spareId)).id);
   expect((await shop.seen(page.id)).waits).toBe(false);
   bench.server.clock.advance(10 * minute);
   await did(bench, checked, 'shelve', { shelfPlace: 'D4' });

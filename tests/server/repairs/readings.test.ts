@@ -1,4 +1,5 @@
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
+import { Charger } from '@/server/entities/charger';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import { packReadingForm, secondSourceForm } from '@/tests/support/repaired';
 import { hour, makeBench, minute, type Bench } from '../charges/bench';
@@ -166,7 +167,7 @@ describe('the second source', () => {
     expect(stripOf(page)).toEqual(strip(1));
   });
 
-  test('is decided by a technician too where the workshop says so, and the session knows it', async () => {
+  test('is decided by a technician too while the workshop says so and no longer, and the session knows it', async () => {
     const manager = bench.as('manager');
     await manager.patch('/api/workshop', { technicianDecides: true }).set('If-Match', '"1"').expect(200);
     expect((await manager.get('/api/workshop')).body).toMatchObject({ technicianDecides: true });
@@ -174,8 +175,15 @@ describe('the second source', () => {
     expect((session.body as { capabilities: string[] }).capabilities).toContain('repair:decide');
     page = await shop.confirm(page, { pointsTo: '3' });
     expect(page.block!.role).toBeNull();
+    const setTo = (technicianDecides: boolean, rev: number) =>
+      manager.patch('/api/workshop', { technicianDecides }).set('If-Match', `"${rev}"`).expect(200);
+    await setTo(false, 2);
+    expect((await shop.seen(page.id)).block!.role).toBe('foreman');
+    expect((await decide({ decision: 'module', modulePosition: '2' }, 'technician')).status).toBe(403);
+    await setTo(true, 3);
     page = await taken(decide({ decision: 'module', modulePosition: '2' }, 'technician'));
     expect(page.failing).toBe('2');
+    expect(page.sources[0]!.decided!.by.name).toBe('Technician of own');
   });
 
   test('names a module, a group and a number of voltages that the pack has, or is refused at its field', async () => {
@@ -189,6 +197,20 @@ describe('the second source', () => {
     expect(await fieldsOf({ healthyGroup: { group: 2, volts: 3.9 } })).toEqual(['healthyGroup.group']);
     expect(await fieldsOf({ healthyGroup: { group: 8, volts: 3.9 } })).toEqual(['healthyGroup.group']);
     expect(await fieldsOf({ readingId: 'nobody-has-this' })).toEqual(['readingId']);
+  });
+
+  test('is not taken from the display of a charger, which cannot reach a module in the pack', async () => {
+    const { manager } = bench.server.deps.dataSource;
+    await manager.update(Charger, { retired: false }, { meterId: bench.meterId });
+    const answer = await shop.send(
+      `repairs/${page.id}/second-source`,
+      secondSourceForm(page.readings[0]!.id, { meterId: bench.meterId }),
+    );
+    expect([answer.status, answer.body.fields.meterId]).toEqual([
+      400,
+      expect.stringMatching(/ is the display of a charger\. Read the module with a hand meter\.$/) as string,
+    ]);
+    expect((await shop.seen(page.id)).sources).toEqual([]);
   });
 
   test('where no group stands out the repair says so, and the hand meter alone needs somebody’s decision', async () => {

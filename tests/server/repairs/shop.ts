@@ -6,7 +6,7 @@ import { expect } from 'vitest';
 import type { RepairPageDto, RepairStep } from '@/shared/contract/repair';
 import type { Role } from '@/shared/contract/roles';
 import { packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
-import { key, wishOf, type Bench, type Wish } from '../charges/bench';
+import { answered, at, did, key, minute, seen, wishOf, type Bench, type Wish } from '../charges/bench';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { PlanDto } from '@/shared/contract/plan';
 
@@ -90,3 +90,16 @@ export const statesOf = (page: RepairPageDto): Record<RepairStep, string> =>
 export const strip = (done: number, next: 'present' | 'blocked' = 'present'): string[] =>
   Array.from({ length: 7 }, (_, place) => (place < done ? 'done' : place === done ? next : 'to-come'));
 export const stripOf = (page: RepairPageDto): string[] => page.steps.map(({ state }) => state);
+
+/** Lives through a charge until it waits for its check, and answers it in tolerance. */
+export async function chargedAndChecked(bench: Bench, chargeId: string): Promise<ChargeDto> {
+  let charge = await did(bench, await answered(bench, await seen(bench, chargeId)), 'start');
+  await bench.live(at(charge.currentEndAt) - bench.server.clock.now() + 2 * minute);
+  charge = await did(bench, await seen(bench, chargeId), 'current-off');
+  await bench.live(at(charge.checkDueAt) - bench.server.clock.now() + minute);
+  return did(bench, await seen(bench, chargeId), 'rest-check', {
+    groupVolts: ['3.950', '3.948'],
+    celsius: 21,
+    meterId: bench.meterId,
+  });
+}

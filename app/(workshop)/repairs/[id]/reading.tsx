@@ -15,7 +15,12 @@ export default function PackReading() {
       capability="repair:write"
       what="Pack readings are entered"
       draw={(repair, back) => (
-        <ReadingForm key={id} repair={repair} onBack={back} onSaved={() => router.replace(`/repairs/${id}` as Href)} />
+        <ReadingForm
+          key={id}
+          repair={repair}
+          onBack={back}
+          onSaved={() => router.dismissTo(`/repairs/${id}` as Href)}
+        />
       )}
     />
   );

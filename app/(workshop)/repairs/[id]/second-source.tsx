@@ -17,7 +17,6 @@ export default function SecondSource() {
   const { id } = useLocalSearchParams<{ id: string }>();
   const router = useRouter();
   const page = `/repairs/${id}`;
-  const go = (to: string) => router.replace(to as Href);
   return (
     <RepairStep
       id={id}
@@ -25,7 +24,13 @@ export default function SecondSource() {
       capability="repair:write"
       what="Second sources are entered"
       draw={(repair, back) => (
-        <Source key={id} repair={repair} onBack={back} onRead={() => go(`${page}/reading`)} onDone={() => go(page)} />
+        <Source
+          key={id}
+          repair={repair}
+          onBack={back}
+          onRead={() => router.replace(`${page}/reading` as Href)}
+          onDone={() => router.dismissTo(page as Href)}
+        />
       )}
     />
   );

@@ -10,8 +10,7 @@ export default function Target() {
   const { id } = useLocalSearchParams<{ id: string }>();
   const router = useRouter();
   const page = `/repairs/${id}`;
-  const go = (to: string) => router.replace(to as Href);
-  const read = () => go(`${page}/reading`);
+  const read = () => router.replace(`${page}/reading` as Href);
   return (
     <RepairStep
       id={id}
@@ -26,7 +25,7 @@ export default function Target() {
             computed={repair.computed}
             onBack={back}
             onRead={read}
-            onTaken={() => go(page)}
+            onTaken={() => router.dismissTo(page as Href)}
           />
         )
       }

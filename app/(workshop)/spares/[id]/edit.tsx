@@ -9,6 +9,7 @@ import { useModuleTypes } from '@/shared/client/module-types';
 import { useChangeSpare, useSpare } from '@/shared/client/spares';
 import type { ModuleTypeDto } from '@/shared/contract/equipment';
 import type { SpareDto } from '@/shared/contract/spare';
+import { ScanButton } from '@/shared/screens/scan/scan-button';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { ChangedMeanwhile } from '@/shared/ui/spare/changed-meanwhile';
@@ -93,7 +94,19 @@ function Form({ spare, types, onBack }: { spare: SpareDto; types: readonly Modul
             }}
           />
         ) : null}
-        <SpareFields form={f.form} types={types} type={types.find((type) => type.id === typeId)} />
+        <SpareFields
+          form={f.form}
+          types={types}
+          type={types.find((type) => type.id === typeId)}
+          scan={
+            <ScanButton
+              onSpare={({ label }) => {
+                f.form.setValue('label', label, { shouldDirty: true, shouldValidate: true });
+                return null;
+              }}
+            />
+          }
+        />
       </View>
     </Screen>
   );

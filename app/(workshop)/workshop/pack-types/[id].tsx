@@ -8,6 +8,7 @@ import { usePackTypes, useSavePackType } from '@/shared/client/pack-types';
 import { partState } from '@/shared/client/part-state';
 import type { ModuleTypeDto } from '@/shared/contract/equipment';
 import type { PackTypeDto } from '@/shared/contract/pack';
+import { useFormats } from '@/shared/ui/format/formats';
 import { BoundField } from '@/shared/ui/forms/bound';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
@@ -57,9 +58,10 @@ function Form({
   onBack: () => void;
 }) {
   const toast = useToast();
+  const { marks } = useFormats();
   const gate = useGate('equipment:write');
   const save = useSavePackType();
-  const [initial] = useState(() => packTypeTexts(packType));
+  const [initial] = useState(() => packTypeTexts(packType, marks));
   const f = useContractForm({
     schema: packTypeForm,
     initial,
@@ -72,7 +74,7 @@ function Form({
     },
   });
   const present = isProblem(f.error) && f.error.status === 412 ? (f.error.present as PackTypeDto) : null;
-  const theirs = present ? packTypeTexts(present) : null;
+  const theirs = present ? packTypeTexts(present, marks) : null;
   return (
     <FormScreen
       title={packType?.name ?? 'New pack type'}
@@ -93,7 +95,7 @@ function Form({
       }
     >
       {gate.may ? null : <Txt tone="ink2">{whoMay(gate)}</Txt>}
-      <Restored restored={f.restored} onAfresh={() => f.clear(packTypeTexts(packType))} />
+      <Restored restored={f.restored} onAfresh={() => f.clear(packTypeTexts(packType, marks))} />
       {theirs ? (
         <ChangedMeanwhile
           what="This pack type"

@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { labelSize, layoutLabel, widthShare, type LabelText } from '@/shared/ui/label/label-layout';
-import { labelOf, noLabelReason } from '@/shared/ui/label/label-words';
+import { labelSize, layoutLabel, widthShare, type LabelText } from '@/shared/contract/label-layout';
+import { labelOf, noLabelReason } from '@/shared/contract/label-words';
+import { labelForms } from '@/shared/ui/label/label-forms';
 import { pointMarks } from '@/shared/ui/format/marks';
 import { charge, iso, zone } from '../charge/charges';
 
@@ -84,7 +85,7 @@ describe('what stands on the label', () => {
 
   it('is the repair, the spare, the module, the target, the groups, and who found it ready when', () => {
     const ready = charge('ready', { modulePosition: '5', targetVolts: 3.964, restChecks: [check] });
-    expect(labelOf(ready, zone, pointMarks)).toEqual({
+    expect(labelOf(ready, labelForms(zone, pointMarks))).toEqual({
       title: 'R-2411',
       spare: 'S-0398',
       position: 'module 5',
