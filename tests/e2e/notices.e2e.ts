@@ -3,6 +3,7 @@ import { afterAll, beforeAll, expect, test } from 'vitest';
 import { describeInBrowser, openBrowser, visit } from '../support/browser';
 import { signInAs } from '../support/demo';
 import { launch, type Launched } from '../support/launch';
+import { watchNotices } from '../support/notices';
 
 describeInBrowser('notices on this device', () => {
   let server: Launched;
@@ -31,13 +32,11 @@ describeInBrowser('notices on this device', () => {
       };
     });
     await page.goto(`${server.url}/more`);
-    await page.getByRole('button', { name: 'Allow notices' }).click();
+    const allow = page.getByRole('button', { name: 'Allow notices' });
+    await allow.waitFor();
+    const titles = await watchNotices(visitor.page);
+    await allow.click();
     await page.getByRole('button', { name: 'Show one now' }).click();
-    const titles = () =>
-      page.evaluate(async () => {
-        const registration = await navigator.serviceWorker.getRegistration();
-        return ((await registration?.getNotifications()) ?? []).map(({ title }) => title);
-      });
     await expect.poll(titles, { timeout: 20_000 }).toContain('Bidewell tells you here');
     // Beside it what this device has missed before it was allowed to: the demo's open alerts, each once.
     await expect.poll(titles, { timeout: 20_000 }).toContain('R-2409 at A1');

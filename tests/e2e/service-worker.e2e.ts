@@ -2,6 +2,7 @@ import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { describeInBrowser, openBrowser, visit, type Visitor } from '../support/browser';
 import { launch, type Launched } from '../support/launch';
+import { watchNotices } from '../support/notices';
 
 describeInBrowser('the service worker in Chromium', () => {
   let server: Launched;
@@ -41,12 +42,15 @@ describeInBrowser('the service worker in Chromium', () => {
           data: data as unknown,
         }));
       });
+    const titles = await watchNotices(visitor.page);
     await post('Resting has ended');
-    await expect.poll(async () => (await shown()).map(({ title }) => title)).toEqual(['Resting has ended']);
+    await expect.poll(titles).toEqual(['Resting has ended']);
+    expect((await shown()).map(({ title }) => title)).toEqual(['Resting has ended']);
     await post('Resting has ended, 10 min late');
-    await expect
-      .poll(shown)
-      .toEqual([{ title: 'Resting has ended, 10 min late', tag: 'cause-1', data: { url: `${server.url}/bench` } }]);
+    await expect.poll(titles).toHaveLength(2);
+    expect(await shown()).toEqual([
+      { title: 'Resting has ended, 10 min late', tag: 'cause-1', data: { url: `${server.url}/bench` } },
+    ]);
   });
 
   test('keeps no file: with the server away nothing old is shown as if it were new', async () => {
