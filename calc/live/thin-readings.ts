@@ -1,4 +1,5 @@
 import type { LiveReading } from '../live-types';
+import { quantile } from '../statistics/quantile';
 import type { LaneReading } from './lane-past';
 
 /** A reading that counts, and what it stands for. */
@@ -20,12 +21,14 @@ const SHORTEST_WINDOW_S = 60;
 const JUMP_AMPS_SHARE = 0.05;
 const JUMP_AMPS = 0.2;
 const JUMP_VOLTS = 0.02;
+/** And by more than so many times what readings beside each other usually differ: a meter that scatters makes no jumps. */
+const JUMP_OF_USUAL = 4;
 
 /**
  * The readings that a reckoning goes through, in the order of time whatever the order they came in.
  *
  * Of up to 32 it is all. Of more the last eight stay, and of the earlier ones the last in each window (of 60, 120, 240 … s, at
- * most 20 windows), both sides of every jump, and the first: readings close together share the error of the model, so that more
+ * most 20 windows), both sides of every jump out of the scatter, and the first: readings close together share the error of the model, so that more
  * of them say little more. No charge is lost: each kept reading brings the trapezium over all that were left out before it.
  */
 export function thinReadings(readings: readonly LiveReading[], nowS: number): KeptReading[] {
@@ -72,6 +75,7 @@ function keptIndexes(all: readonly LiveReading[]): (at: number) => boolean {
   let windowS = SHORTEST_WINDOW_S;
   while (span / windowS > WINDOWS) windowS *= 2;
   const windowOf = (at: number): number => Math.floor(all[at]!.s / windowS);
+  const isJump = jumpsOf(all);
   return (at) =>
     at === 0 ||
     at >= early ||
@@ -81,16 +85,34 @@ function keptIndexes(all: readonly LiveReading[]): (at: number) => boolean {
     hasMore(all[at]!, all[at + 1]!);
 }
 
-function isJump(one: LiveReading, next: LiveReading): boolean {
-  if (one.amps !== null && next.amps !== null) {
-    const most = Math.max(Math.abs(one.amps), Math.abs(next.amps));
-    if (Math.abs(Math.abs(one.amps) - Math.abs(next.amps)) > Math.max(JUMP_AMPS, JUMP_AMPS_SHARE * most)) return true;
+/** Whether one reading is a jump from the one before: in the current, or in the volts between the clips. */
+function jumpsOf(all: readonly LiveReading[]): (one: LiveReading, next: LiveReading) => boolean {
+  const jumpAmps = Math.max(JUMP_AMPS, JUMP_OF_USUAL * usualStep(all, ({ amps }) => amps && Math.abs(amps)));
+  const jumpVolts = Math.max(JUMP_VOLTS, JUMP_OF_USUAL * usualStep(all, ({ terminalVolts }) => terminalVolts));
+  return (one, next) => {
+    if (one.amps !== null && next.amps !== null) {
+      const most = Math.max(Math.abs(one.amps), Math.abs(next.amps));
+      if (Math.abs(Math.abs(one.amps) - Math.abs(next.amps)) > Math.max(jumpAmps, JUMP_AMPS_SHARE * most)) return true;
+    }
+    return (
+      one.terminalVolts !== null &&
+      next.terminalVolts !== null &&
+      Math.abs(one.terminalVolts - next.terminalVolts) > jumpVolts
+    );
+  };
+}
+
+/** Median of the steps between readings beside each other; 0 where fewer than two were read. */
+function usualStep(all: readonly LiveReading[], of: (reading: LiveReading) => number | null): number {
+  const steps: number[] = [];
+  let before: number | null = null;
+  for (const reading of all) {
+    const value = of(reading);
+    if (value === null) continue;
+    if (before !== null) steps.push(Math.abs(value - before));
+    before = value;
   }
-  return (
-    one.terminalVolts !== null &&
-    next.terminalVolts !== null &&
-    Math.abs(one.terminalVolts - next.terminalVolts) > JUMP_VOLTS
-  );
+  return steps.length === 0 ? 0 : quantile(steps, 0.5);
 }
 
 /** Group voltages or a temperature among readings without are rare, and wanted. */

@@ -43,10 +43,16 @@ export type SampleRun = (sample: Sample) => { seconds: number; ampHours: number 
 export function sampleRun(input: SampleRunInput): SampleRun {
   const { source, sign, count, aimVolts, endAmps } = input;
   const known = new Map<Sample, { seconds: number; ampHours: number }>();
+  // Made once and not in each of hundreds of samples: a law is done with before the next sample comes.
+  let string: StringCharge;
+  const openVolts = (ampHours: number): number => stringVolts(string, ampHours);
+  const ampHoursTo = (volts: number): number => ampHoursToVolts(string, volts);
   return (sample) => {
     const before = known.get(sample);
     if (before) return before;
-    const { string, ohm } = input.stringIn(sample);
+    const found = input.stringIn(sample);
+    string = found.string;
+    const { ohm } = found;
     const resistanceOhm = ohm + (input.leadOhmIn?.(sample) ?? source.leadResistanceOhm) + input.linkOhm;
     const asSet =
       source.setVolts === null
@@ -54,8 +60,8 @@ export function sampleRun(input: SampleRunInput): SampleRun {
         : source.setVolts + count * sample.curveShiftVolts + input.chargerSd * sample.chargerDraw;
     const startAmps = input.startAmps ?? null;
     const law: CurrentLaw = {
-      openVolts: (ampHours) => stringVolts(string, ampHours),
-      ampHoursTo: (volts) => ampHoursToVolts(string, volts),
+      openVolts,
+      ampHoursTo,
       sign,
       maxAmps: (source.maxAmps ?? Infinity) * sample.currentFactor ** (input.currentWidening ?? 1),
       setVolts: startAmps === null ? asSet : stringVolts(string, 0) + sign * startAmps * resistanceOhm,
@@ -72,9 +78,9 @@ export function sampleRun(input: SampleRunInput): SampleRun {
       input.first && endAmps === null
         ? Math.max(0, ampHoursToFirst(string, sample.targetSoc))
         : ampHoursToVolts(string, goal);
-    const found = { seconds: currentSeconds(law, ampHours), ampHours };
-    known.set(sample, found);
-    return found;
+    const run = { seconds: currentSeconds(law, ampHours), ampHours };
+    known.set(sample, run);
+    return run;
   };
 }
 

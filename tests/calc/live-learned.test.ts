@@ -151,6 +151,21 @@ describe('a replay of the readings', () => {
 });
 
 describe('a hundred readings at 10 s', () => {
+  it('of a meter that scatters by 0.5 A are thinned to 40, and those on both sides of a loose clip stay', () => {
+    const chance = new Chance(11);
+    const scattered = Array.from({ length: 100 }, (_, k): LiveReading => ({
+      s: 10 * (k + 1),
+      terminalVolts: null,
+      // From the 81st on a clip is off.
+      amps: k < 80 ? 10 + 0.5 * chance.normal() : 0,
+      celsius: null,
+      groupVolts: null,
+    }));
+    const kept = thinReadings(scattered, 1000);
+    expect(kept.length).toBeLessThan(40);
+    expect(kept.map(({ s }) => s)).toEqual(expect.arrayContaining([800, 810]));
+  });
+
   it('leave more than 0.8 of the band that two at the ends of them leave: they share the error of the model', () => {
     const from = 3600;
     const dense = readingsOf(66, 0.002, 10, from + 1000).filter(({ s }) => s >= from);
