@@ -1,4 +1,4 @@
-import { cleanup } from '@testing-library/react';
+import { cleanup, configure } from '@testing-library/react';
 import { afterEach } from 'vitest';
 
 // Set by some runners; Reanimated would take its Jest path.
@@ -19,5 +19,8 @@ window.matchMedia ??= (query: string): MediaQueryList => ({
 // jsdom counts a frame's time from another zero than performance.now, and Reanimated compares the two.
 window.requestAnimationFrame = (callback) => Number(setTimeout(() => callback(performance.now()), 16));
 window.cancelAnimationFrame = (id) => clearTimeout(id);
+
+// The usual second is short on a machine that runs other work beside the tests; nothing here is about speed.
+configure({ asyncUtilTimeout: 10_000 });
 
 afterEach(() => cleanup());
