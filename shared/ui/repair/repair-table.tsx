@@ -75,7 +75,8 @@ export function RepairTable({ cards, at, old = false, onOpen }: RepairsShown) {
           cell: (card) => {
             const ready = card.charge ? readyOf(card.charge, at) : null;
             return ready ? (
-              <View style={{ flexDirection: 'row', alignItems: 'baseline', columnGap: 6 }}>
+              // The band goes under the time where a clock of twelve hours makes both too long for one line.
+              <View style={{ flexDirection: 'row', flexWrap: 'wrap', alignItems: 'baseline', columnGap: 6 }}>
                 <Txt kind="numS" nowrap tone={freshTone(old)}>
                   {readyAt(ready, zone, at.now, marks)}
                 </Txt>
