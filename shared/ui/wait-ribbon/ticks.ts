@@ -9,6 +9,8 @@ export interface Tick {
 
 const steps = [900, 1800, 3600, 7200, 10_800, 21_600, 43_200, 86_400];
 const labelWidth = 52;
+/** '12:00 pm' beside the last one, which stands inside the end of the axis. */
+const labelWidth12 = 90;
 
 /** The shortest step whose labels stand at least 52 px apart. */
 export const tickStep = (spanS: number, width: number, minWidth = labelWidth): number =>
@@ -23,8 +25,8 @@ export function clockTicks({
   toS,
   width,
   zone,
-  stepS = tickStep(toS - fromS, width),
   marks = pointMarks,
+  stepS = tickStep(toS - fromS, width, marks.hour12 ? labelWidth12 : labelWidth),
 }: {
   zeroInstant: number;
   fromS: number;

@@ -206,6 +206,15 @@ describe('time axis', () => {
     expect(tickStep(9 * 3600, 358)).toBe(7200);
   });
 
+  it('stand 90 px apart where a clock of twelve hours makes their words longer', () => {
+    const axis = { zeroInstant: 0, fromS: 0, toS: 4 * 3600, width: 420, zone: 'UTC' };
+    const apart = (hour12: boolean) => {
+      const [first, second] = clockTicks({ ...axis, marks: { decimal: '.', hour12 } });
+      return ((second!.s - first!.s) / axis.toS) * axis.width;
+    };
+    expect([apart(false), apart(true)]).toEqual([52.5, 105]);
+  });
+
   it('counts from the clip-on: clip on, 1 h, 2 h, 3 h', () => {
     expect(spanTicks({ toS: 225 * 60, width: 358 }).map((tick) => tick.text.replaceAll('\u00a0', ' '))).toEqual([
       'clip on',
