@@ -28,8 +28,9 @@ const JUMP_OF_USUAL = 4;
  * The readings that a reckoning goes through, in the order of time whatever the order they came in.
  *
  * Of up to 32 it is all. Of more the last eight stay, and of the earlier ones the last in each window (of 60, 120, 240 … s, at
- * most 20 windows), both sides of every jump out of the scatter, and the first: readings close together share the error of the model, so that more
- * of them say little more. No charge is lost: each kept reading brings the trapezium over all that were left out before it.
+ * most 20 windows), both sides of every jump out of the scatter, and the first: readings close together share the error of the
+ * model, so that more of them say little more. No charge is lost: each kept reading brings the trapezium over all that were left
+ * out before it.
  */
 export function thinReadings(readings: readonly LiveReading[], nowS: number): KeptReading[] {
   const all = readings.filter(({ s }) => s <= nowS).sort(inOrder);
