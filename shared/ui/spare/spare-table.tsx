@@ -136,7 +136,7 @@ export function SpareTable({
         {
           key: 'state',
           title: 'State',
-          width: 196,
+          width: 180,
           cell: (item) => {
             const mark = stockMark(item);
             if (mark === null)
