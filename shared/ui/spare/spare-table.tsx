@@ -113,7 +113,7 @@ export function SpareTable({
                     />
                   ) : null}
                 </View>
-                <Txt kind="numXS" align="right" style={{ width: 44 }}>
+                <Txt kind="numXS" align="right" style={{ width: 36, flexShrink: 0 }}>
                   {ampHoursNumber(spare.usedCapacityAh, marks)}
                 </Txt>
                 <Txt kind="small" tone="ink2" nowrap>
@@ -136,7 +136,7 @@ export function SpareTable({
         {
           key: 'state',
           title: 'State',
-          width: 180,
+          width: 172,
           cell: (item) => {
             const mark = stockMark(item);
             if (mark === null)
