@@ -45,6 +45,7 @@ export async function writePackTypes(manager: EntityManager, setUpAt: number): P
     workshopId,
     name: packs[type].name,
     ...packColumnsOf(packOf(type)),
+    usualArrivalVolts: null,
     note: null,
     rev: 1,
     createdAt: setUpAt,

@@ -1,6 +1,7 @@
 /** All entities, listed: globs break in a bundle. */
 import { AdvisedItem } from './advised-item';
 import { Alert } from './alert';
+import { BenchChange } from './bench-change';
 import { Channel } from './channel';
 import { ChannelHold } from './channel-hold';
 import { Charge } from './charge';
@@ -19,6 +20,7 @@ import { PackReading } from './pack-reading';
 import { PackType } from './pack-type';
 import { Person } from './person';
 import { Photo } from './photo';
+import { Place } from './place';
 import { RemovedModule } from './removed-module';
 import { Repair } from './repair';
 import { RepairEvent } from './repair-event';
@@ -28,11 +30,15 @@ import { RestCheck } from './rest-check';
 import { RunStretch } from './run-stretch';
 import { SecondSource } from './second-source';
 import { Session } from './session';
+import { Skill } from './skill';
 import { Spare } from './spare';
 import { SpareCapacity } from './spare-capacity';
 import { SpareReading } from './spare-reading';
+import { Staffing } from './staffing';
 import { Wall } from './wall';
 import { WallCode } from './wall-code';
+import { Work } from './work';
+import { WorkStint } from './work-stint';
 import { Workshop } from './workshop';
 
 export const entities = [
@@ -70,5 +76,11 @@ export const entities = [
   Wall,
   WallCode,
   FittedSpare,
+  Place,
+  Skill,
+  Staffing,
+  Work,
+  WorkStint,
+  BenchChange,
   IdempotencyKey,
 ];

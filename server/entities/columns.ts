@@ -34,5 +34,6 @@ export const optionalTextColumn = (name: string): ColumnOptions => ({ type: 'var
 export const realColumn = (name: string): ColumnOptions => ({ type: 'double precision', name });
 export const optionalRealColumn = (name: string): ColumnOptions => ({ type: 'double precision', name, nullable: true });
 export const wholeColumn = (name: string): ColumnOptions => ({ type: 'integer', name });
+export const optionalWholeColumn = (name: string): ColumnOptions => ({ type: 'integer', name, nullable: true });
 export const flagColumn = (name: string): ColumnOptions => ({ type: 'boolean', name });
 export const optionalFlagColumn = (name: string): ColumnOptions => ({ type: 'boolean', name, nullable: true });

@@ -1,5 +1,5 @@
 import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
-import { idColumn, instantColumn, optionalTextColumn, textColumn, wholeColumn } from './columns';
+import { idColumn, instantColumn, optionalRealColumn, optionalTextColumn, textColumn, wholeColumn } from './columns';
 import { ModuleType } from './module-type';
 import { packColumns } from './pack-columns';
 import { Workshop } from './workshop';
@@ -36,6 +36,10 @@ export class PackType {
 
   @Column(packColumns.aimMillivolts)
   aimMillivolts!: number | null;
+
+  /** Rest voltage per group with which such packs usually arrive, V; null: as the workshop's own arrivals tell. */
+  @Column(optionalRealColumn('usual_arrival_volts'))
+  usualArrivalVolts!: number | null;
 
   @Column(optionalTextColumn('note'))
   note!: string | null;

@@ -5,6 +5,7 @@ import {
   instantColumn,
   jsonColumn,
   optionalFlagColumn,
+  optionalWholeColumn,
   realColumn,
   textColumn,
   wholeColumn,
@@ -43,6 +44,18 @@ export class Workshop {
   /** A technician too decides where two sources disagree; null: as workshops begin, no. */
   @Column(optionalFlagColumn('technician_decides'))
   technicianDecides!: boolean | null;
+
+  /** Charges may run while nobody is there; null: as workshops begin, no. */
+  @Column(optionalFlagColumn('unattended_charges'))
+  unattendedCharges!: boolean | null;
+
+  /** What a look-in takes, min; null: 5. */
+  @Column(optionalWholeColumn('look_in_visit_minutes'))
+  lookInVisitMinutes!: number | null;
+
+  /** What fitting a ready module takes, min; null: 60. */
+  @Column(optionalWholeColumn('fit_minutes'))
+  fitMinutes!: number | null;
 
   @Column(wholeColumn('board_rev'))
   boardRev!: number;

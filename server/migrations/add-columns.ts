@@ -1,7 +1,10 @@
 import type { QueryRunner } from 'typeorm';
 
 /** Columns by table, each with its type; all of them may be empty. */
-export type NewColumns = Record<string, Record<string, 'boolean' | 'double precision' | 'text' | 'varchar' | 'bigint'>>;
+export type NewColumns = Record<
+  string,
+  Record<string, 'boolean' | 'double precision' | 'text' | 'varchar' | 'bigint' | 'integer'>
+>;
 
 /** Plain statements, which both databases have: the Table API would build a table anew on SQLite. */
 export async function addColumns(runner: QueryRunner, columns: NewColumns): Promise<void> {

@@ -12,6 +12,7 @@ import { Photos1765550000000 } from './1765550000000-photos';
 import { CustomerErased1765600000000 } from './1765600000000-customer-erased';
 import { PackBalance1765800000000 } from './1765800000000-pack-balance';
 import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
+import { BenchPlan1765900000000 } from './1765900000000-bench-plan';
 
 export const migrations = [
   Initial1764600000000,
@@ -27,4 +28,5 @@ export const migrations = [
   CustomerErased1765600000000,
   PackBalance1765800000000,
   FittedSpare1765810000000,
+  BenchPlan1765900000000,
 ];

@@ -22,6 +22,7 @@ async function dtosOf(manager: EntityManager, workshopId: string): Promise<PackT
     id: type.id,
     name: type.name,
     pack: packDto(type, names.get(type.moduleTypeId ?? '') ?? null),
+    usualArrivalVolts: type.usualArrivalVolts,
     note: type.note,
     rev: type.rev,
   }));
@@ -43,6 +44,7 @@ export async function addPackType(deps: Deps, member: Member, input: PackTypeInp
       id: newId(),
       workshopId,
       name: input.name,
+      usualArrivalVolts: input.usualArrivalVolts ?? null,
       note: input.note,
       rev: 1,
       createdAt: now,
@@ -75,7 +77,12 @@ export async function changePackType(
     await refuseOddPack(manager, workshopId, input.pack);
     await savePackType(
       manager,
-      Object.assign(row, packColumnsOf(input.pack), { name: input.name, note: input.note, rev: rev + 1 }),
+      Object.assign(row, packColumnsOf(input.pack), {
+        name: input.name,
+        usualArrivalVolts: input.usualArrivalVolts ?? null,
+        note: input.note,
+        rev: rev + 1,
+      }),
     );
     return dtoOf(manager, workshopId, id);
   });

@@ -15,4 +15,7 @@ export const defaultSettings = (name: string, zone: string): Required<WorkshopSe
   inrushLimitC: 1,
   lagLimitMillivolts: 20,
   technicianDecides: false,
+  unattendedCharges: false,
+  lookInVisitMinutes: 5,
+  fitMinutes: 60,
 });

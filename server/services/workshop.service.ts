@@ -5,6 +5,9 @@ import { notFound, stale } from '../errors/domain-error';
 import { findWorkshop, updateWorkshop } from '../repositories/workshops.repository';
 import { toInstant } from './instants';
 import { inTransaction } from './unit-of-work';
+import { defaultSettings } from './workshop-defaults';
+
+const defaults = defaultSettings('', 'UTC');
 
 const workshopDto = (workshop: Workshop): WorkshopDto => ({
   id: workshop.id,
@@ -17,6 +20,9 @@ const workshopDto = (workshop: Workshop): WorkshopDto => ({
   inrushLimitC: workshop.inrushLimitC,
   lagLimitMillivolts: workshop.lagLimitMillivolts,
   technicianDecides: workshop.technicianDecides === true,
+  unattendedCharges: workshop.unattendedCharges === true,
+  lookInVisitMinutes: workshop.lookInVisitMinutes ?? defaults.lookInVisitMinutes,
+  fitMinutes: workshop.fitMinutes ?? defaults.fitMinutes,
   rev: workshop.rev,
 });
 

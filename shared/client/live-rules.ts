@@ -33,6 +33,9 @@ export const liveRoots: readonly Root[] = [
   roots.invitations,
   roots.workshop,
   roots.walls,
+  roots.benchPlan,
+  roots.work,
+  roots.staffing,
 ];
 
 export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment) {
@@ -43,6 +46,8 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
     old(roots.board);
     old(roots.charges);
     old(roots.chargers);
+    // Its time line, its fills and its queue stand on the charges.
+    old(roots.benchPlan);
   };
 
   const rules: { [E in LiveEventName]: (event: LivePayload<E>) => void } = {
@@ -73,8 +78,13 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
       old(roots.board);
       old(roots.spares);
     },
+    'bench:changed': () => {
+      for (const root of [roots.benchPlan, roots.work, roots.staffing]) old(root);
+    },
     'people:changed': () => {
       old(roots.people);
+      old(roots.staffing);
+      old(roots.benchPlan);
       old(roots.invitations);
       old(roots.session);
     },
@@ -82,6 +92,8 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
       old(roots.workshop);
       old(roots.session);
       old(roots.board);
+      old(roots.staffing);
+      old(roots.benchPlan);
     },
     'walls:changed': () => old(roots.walls),
     'alert:raised': () => old(roots.alerts),

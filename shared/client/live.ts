@@ -18,20 +18,23 @@ import { sessionLost } from './session';
 
 type LiveSocket = Socket<ServerToClientEvents, ClientToServerEvents>;
 
-const names = [
-  'board:changed',
-  'charge:changed',
-  'repair:changed',
-  'stock:changed',
-  'equipment:changed',
-  'people:changed',
-  'workshop:changed',
-  'walls:changed',
-  'alert:raised',
-  'alert:changed',
-  'heartbeat',
-  'session:ended',
-] as const satisfies readonly LiveEventName[];
+/** A record, so that an announcement left out does not compile. */
+const heardOf: Record<LiveEventName, true> = {
+  'board:changed': true,
+  'charge:changed': true,
+  'repair:changed': true,
+  'stock:changed': true,
+  'equipment:changed': true,
+  'bench:changed': true,
+  'people:changed': true,
+  'workshop:changed': true,
+  'walls:changed': true,
+  'alert:raised': true,
+  'alert:changed': true,
+  heartbeat: true,
+  'session:ended': true,
+};
+const names = Object.keys(heardOf) as LiveEventName[];
 
 const alertListeners = new Set<(alert: AlertDto) => void>();
 /** Hears of every alert the moment it is raised. */

@@ -26,5 +26,8 @@ export const roots = {
   wallRequest: 'wall-request',
   wallMe: 'wall-me',
   waits: 'waits',
+  benchPlan: 'bench-plan',
+  work: 'work',
+  staffing: 'staffing',
 } as const;
 export type Root = (typeof roots)[keyof typeof roots];

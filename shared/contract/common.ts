@@ -37,6 +37,9 @@ export const optionalInstant = z.pipe(
   z.nullable(instant),
 );
 
+/** A calendar day of the workshop: '2026-06-09'. */
+export const day = z.string().check(z.regex(/^\d{4}-\d\d-\d\d$/, 'Type the day like 2026-06-09.'));
+
 /** A reason people must give. */
 export const reason = text('The reason', 300);
 

@@ -8,6 +8,8 @@ export interface ServerToClientEvents {
   'repair:changed': (event: { id: string; rev: number; at: Instant }) => void;
   'stock:changed': (event: { at: Instant }) => void;
   'equipment:changed': (event: { at: Instant }) => void;
+  /** Other work, what is taken of it, hours, places, or the plan itself. */
+  'bench:changed': (event: { at: Instant }) => void;
   'people:changed': (event: { at: Instant }) => void;
   'workshop:changed': (event: { at: Instant }) => void;
   'walls:changed': (event: { at: Instant }) => void;

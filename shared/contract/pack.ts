@@ -53,6 +53,8 @@ export type PackInput = z.infer<typeof packSchema>;
 export const packTypeSchema = z.object({
   name: text('The name', 60),
   pack: packSchema,
+  /** Rest voltage per group with which such packs usually arrive; empty: as the workshop's own arrivals tell. */
+  usualArrivalVolts: z.optional(optionalQuantity({ name: 'Usual arrival', unit: 'V', min: 0.5, max: 5 })),
   note: optionalText('The note'),
 });
 export type PackTypeInput = z.infer<typeof packTypeSchema>;
@@ -64,8 +66,9 @@ export interface PackDto extends PackInput {
   moduleCount: number;
 }
 
-export interface PackTypeDto extends Omit<PackTypeInput, 'pack'> {
+export interface PackTypeDto extends Omit<PackTypeInput, 'pack' | 'usualArrivalVolts'> {
   id: string;
+  usualArrivalVolts: number | null;
   pack: PackDto;
   rev: number;
 }

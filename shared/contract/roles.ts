@@ -21,6 +21,9 @@ export const capabilities = [
   'repair:delete',
   'customer:data',
   'alert:take',
+  'work:read',
+  'work:write',
+  'bench:plan',
   'wall:approve',
   'wall:revoke',
   'waits:read',
@@ -41,6 +44,8 @@ const technician: Capability[] = [
   'repair:read',
   'repair:write',
   'alert:take',
+  'work:read',
+  'work:write',
   'people:read',
 ];
 const foreman: Capability[] = [
@@ -48,6 +53,7 @@ const foreman: Capability[] = [
   'spare:release',
   'charge:correct-any',
   'charge:assign',
+  'bench:plan',
   'repair:decide',
   'repair:export',
   'wall:approve',

@@ -1,7 +1,6 @@
 import * as z from 'zod/mini';
-import type { Instant } from './common';
+import { day, type Instant } from './common';
 
-const day = z.string().check(z.regex(/^\d{4}-\d\d-\d\d$/, 'Type the day like 2026-06-09.'));
 export const waitsQuerySchema = z.object({
   from: z.optional(day),
   to: z.optional(day),

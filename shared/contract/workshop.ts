@@ -3,12 +3,13 @@ import { text } from './common';
 import { quantity } from './quantity';
 import { zone } from './session';
 
-const time = z.string().check(z.regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Type the time like 08:00.'));
+/** 'HH:MM' of a day in the workshop's zone. */
+export const timeOfDay = z.string().check(z.regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Type the time like 08:00.'));
 
 /** One day's opening; null: closed. Index 0 is Monday. */
 export const dayHours = z.nullable(
   z
-    .object({ from: time, to: time })
+    .object({ from: timeOfDay, to: timeOfDay })
     .check(z.refine((day) => day.from < day.to, { message: 'Closing must come after opening.', path: ['to'] })),
 );
 
@@ -23,6 +24,12 @@ export const workshopSettingsSchema = z.object({
   lagLimitMillivolts: quantity({ name: 'Lag limit', unit: 'mV', min: 1, max: 200 }),
   /** A technician too decides where the pack and the hand meter point to different modules. Left out: no. */
   technicianDecides: z.optional(z.boolean()),
+  /** Charges may run while nobody is there to look in: overnight, at weekends. Left out: no. */
+  unattendedCharges: z.optional(z.boolean()),
+  /** What one look-in takes. Left out: 5. */
+  lookInVisitMinutes: z.optional(quantity({ name: 'Minutes of a look-in', unit: 'min', min: 1, max: 60, whole: true })),
+  /** What fitting a ready module takes, in people's lines of the bench plan. Left out: 60. */
+  fitMinutes: z.optional(quantity({ name: 'Minutes to fit', unit: 'min', min: 5, max: 600, whole: true })),
 });
 /** What is left out stays as it is. */
 export const changeWorkshopSchema = z.partial(workshopSettingsSchema);

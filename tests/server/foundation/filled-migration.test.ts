@@ -32,6 +32,7 @@ const comeAndGo = {
     'spare_capacity',
     ...['pack_type', 'repair', 'repair_person', 'pack_reading', 'second_source', 'removed_module', 'repair_wait'],
     ...['repair_event', 'advised_item', 'photo', 'fitted_spare'],
+    ...['place', 'skill', 'staffing', 'work', 'work_stint', 'bench_change'],
   ],
   columns: [
     ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],
@@ -39,6 +40,7 @@ const comeAndGo = {
     ...['cold_current_percent', 'warm_current_percent', 'precharge_below_volts'],
     ...['display_step_amps', 'leads_measured', 'derating_above_celsius', 'derating_percent', 'duty_percent'],
     ...['technician_decides', 'repair_id'],
+    ...['unattended_charges', 'look_in_visit_minutes', 'fit_minutes', 'usual_arrival_volts'],
   ],
 };
 
