@@ -7,7 +7,7 @@ import { isWaitingToStart } from '../charge-stages';
 import { plainAmpsText } from '../charge-words';
 import { toInstant } from '../instants';
 import { lookInDto, type GivenLookIn } from './charge-look-ins';
-import type { BenchGround } from './ground';
+import { hasTime, type BenchGround } from './ground';
 import { heldSpans } from './held-spans';
 import { overlaps } from './spans';
 
@@ -54,7 +54,7 @@ export function planCharges(
   lookIns: readonly GivenLookIn[],
 ): PlanChargeDto[] {
   const { files, days, now } = ground;
-  return files.flatMap((file) => {
+  return files.filter((file) => hasTime(file, now)).flatMap((file) => {
     const holds = heldSpans(file, now);
     const card = chargeCard(file, now);
     const times = [...holds, ...card.segments.map(({ from, to }) => ({ from: Date.parse(from), to: Date.parse(to) }))];
