@@ -39,7 +39,9 @@ export function givenLookIns(ground: BenchGround, hands: ReadonlyMap<string, rea
       .filter(({ doneAt }) => doneAt !== null)
       .map(({ dueAt, doneAt, personId }): GivenLookIn => ({ file, dueAt, doneAt, personId })),
   );
-  const wanted = files.filter((file) => hasTime(file, now)).flatMap((file) => wantedOf(file, now).map((dueAt) => ({ file, dueAt })));
+  const wanted = files
+    .filter((file) => hasTime(file, now))
+    .flatMap((file) => wantedOf(file, now).map((dueAt) => ({ file, dueAt })));
   const seconds = ({ from, to }: Stretch) => ({ fromS: (from - now) / 1000, toS: (to - now) / 1000 });
   const given = assignLookIns(
     wanted.map(({ file, dueAt }, index) => ({

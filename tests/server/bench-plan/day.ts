@@ -54,7 +54,8 @@ export const planOf = (bench: Bench, query = ''): Promise<BenchPlanDto> =>
   bodyOf(bench.as('foreman').get(`/api/bench-plan${query}`));
 export const placesOf = (bench: Bench, chargeId: string): Promise<MovePlacesDto> =>
   bodyOf(bench.as('foreman').get(`/api/bench-plan/places?chargeId=${chargeId}`));
-export const fitsOf = (bench: Bench, role: Role): Promise<FitsDto> => bodyOf(bench.as(role).get('/api/bench-plan/fits'));
+export const fitsOf = (bench: Bench, role: Role): Promise<FitsDto> =>
+  bodyOf(bench.as(role).get('/api/bench-plan/fits'));
 
 /** Null: nothing is better. */
 export async function proposalOf(bench: Bench): Promise<ProposalDto | null> {
