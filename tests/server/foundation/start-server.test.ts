@@ -36,6 +36,8 @@ const configFor = (dataDir: string, change: Partial<Config> = {}): Config => ({
   publicUrl: null,
   logLevel: 'silent',
   metroPort: null,
+  backupHours: 0,
+  metricsToken: null,
   ...change,
 });
 
@@ -92,7 +94,7 @@ describe('the first start', () => {
     expect((await request(first.address).post('/api/session').send({ email, password: 'not this' })).status).toBe(401);
     await first.stop();
     running.pop();
-    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key']);
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key', 'server.lock']);
     const second = await start(folder);
     expect((await request(second.address).get('/api/session').set('Cookie', cookie)).body.person.email).toBe(email);
   });
@@ -190,6 +192,7 @@ beforeAll(async () => {
     entryPoints: [
       { in: 'server/index.ts', out: 'main' },
       { in: 'server/workers/bcrypt.ts', out: 'workers/bcrypt' },
+      { in: 'server/workers/back-up.ts', out: 'workers/back-up' },
     ],
     outdir: bundle,
     bundle: true,
@@ -209,7 +212,15 @@ afterAll(() => {
 
 function spawnServer(folder: string, env: Record<string, string> = {}) {
   const child = spawn(process.execPath, [path.join(bundle, 'main.js')], {
-    env: { ...process.env, PORT: '0', BIDEWELL_DATA: folder, BIDEWELL_DEMO: 'off', BIDEWELL_HOST: '127.0.0.1', ...env },
+    env: {
+      ...process.env,
+      PORT: '0',
+      BIDEWELL_DATA: folder,
+      BIDEWELL_DEMO: 'off',
+      BIDEWELL_HOST: '127.0.0.1',
+      BIDEWELL_BACKUP_HOURS: '0',
+      ...env,
+    },
     stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
   });
   children.push(child);
@@ -264,7 +275,7 @@ describe('the process', () => {
     finish();
     expect(await status).toBe(201);
     expect(await exit).toBe(0);
-    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key']);
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key', 'server.lock']);
     expect(mode(databaseFile(folder))).toBe('600');
     const database = new Database(databaseFile(folder), { readonly: true });
     expect(database.prepare('SELECT email FROM person').all()).toEqual([{ email: 'alva@example.com' }]);
@@ -302,6 +313,34 @@ describe('the process', () => {
     expect(second.told).toEqual([]);
     first.child.kill('SIGTERM');
     expect(await first.exit).toBe(0);
+  });
+
+  it('on a folder that another one works on says so and exits with 1; after that one was killed it starts', async () => {
+    const folder = newFolder();
+    const first = spawnServer(folder);
+    await first.said(/"address":"([^"]+)"/);
+    const second = spawnServer(folder);
+    expect(await second.exit).toBe(1);
+    expect(second.output()).toContain(`Another Bidewell works on ${folder}`);
+    expect(second.told).toEqual([]);
+    first.child.kill('SIGKILL');
+    await first.exit;
+    const third = spawnServer(folder);
+    await third.said(/"address":"([^"]+)"/);
+    third.child.kill('SIGTERM');
+    expect(await third.exit).toBe(0);
+  });
+
+  it('copies its data by the clock into the backups, where there is none yet', async () => {
+    const folder = newFolder();
+    const server = spawnServer(folder, { BIDEWELL_BACKUP_HOURS: '1' });
+    await server.said(/"address":"([^"]+)"/);
+    await server.said(/(data copied)/);
+    const names = fs.readdirSync(path.join(folder, 'backups'));
+    expect(names).toHaveLength(1);
+    expect(names[0]).toMatch(/^bidewell-clock-.*\.sqlite$/);
+    server.child.kill('SIGTERM');
+    expect(await server.exit).toBe(0);
   });
 
   it('with a setting that cannot be says which, and exits with 1', async () => {
