@@ -2,9 +2,8 @@ import type { StatusDto } from '@/shared/contract/status';
 import { age, moment } from '../format/clock';
 import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
-import { NBSP } from '../format/marks';
+import { NBSP, type LocaleMarks } from '../format/marks';
 import { shortest } from '../format/number';
-import type { LocaleMarks } from '../format/marks';
 import { FactList } from '../primitives/fact-list';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
@@ -15,6 +14,12 @@ export function fileSize(bytes: number, marks: LocaleMarks): string {
   const step = bytes < 1 ? 0 : Math.min(units.length - 1, Math.floor(Math.log2(bytes) / 10));
   const value = bytes / 1024 ** step;
   return `${shortest(value, value < 100 && step > 0 ? 1 : 0, marks)}${NBSP}${units[step] ?? 'B'}`;
+}
+
+/** 'every hour', 'every 6 h' */
+function everyWords(hours: number, marks: LocaleMarks): string {
+  if (hours === 0) return 'never';
+  return hours === 1 ? 'every hour' : `every ${shortest(hours, 2, marks)}${NBSP}h`;
 }
 
 /** Copies that are this many intervals old are a sign that none is made any more. */
@@ -67,7 +72,7 @@ export function StatusFacts({ status, now }: { status: StatusDto; now: number })
         },
         {
           name: 'Made by the clock',
-          value: backups.everyHours === 0 ? 'never' : `every ${duration(backups.everyHours * 3600)}`,
+          value: everyWords(backups.everyHours, marks),
         },
       ]}
     />
