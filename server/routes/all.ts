@@ -14,9 +14,11 @@ import { repairsRoutes } from './repairs.routes';
 import { searchRoutes } from './search.routes';
 import { sessionRoutes } from './session.routes';
 import { statusRoutes } from './status.routes';
+import { staffingRoutes } from './staffing.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
 import { wallRoutes } from './wall.routes';
+import { workRoutes } from './work.routes';
 import { workshopRoutes } from './workshop.routes';
 
 export const routesModules: RoutesModule[] = [
@@ -38,4 +40,6 @@ export const routesModules: RoutesModule[] = [
   boardRoutes,
   alertsRoutes,
   waitsRoutes,
+  staffingRoutes,
+  workRoutes,
 ];
