@@ -15,6 +15,36 @@ export function standsAt({ card, holds }: PlanChargeDto): Candidate | null {
   return first ? { channelId: first.channelId, clipOn: Date.parse(card.clipOnAt) } : null;
 }
 
+/** What is being moved: a charge of the days shown, or one of the queue whose day is another. */
+export interface MoveSubject {
+  chargeId: string;
+  title: string;
+  rev: number;
+  fixedBecause: string | null;
+  stands: Candidate | null;
+  channelNames: readonly string[];
+  clipOnAt: string;
+  dueAt: string | null;
+  /** null: it is not on the days shown, and nothing is drawn of it. */
+  charge: PlanChargeDto | null;
+}
+
+/** The charge or the row of the queue with this id; null: it is gone. */
+export function subjectOf(plan: BenchPlanDto, chargeId: string): MoveSubject | null {
+  const charge = plan.charges.find(({ card }) => card.id === chargeId) ?? null;
+  const row = plan.queue.find((one) => one.chargeId === chargeId);
+  if (charge) {
+    const { title, rev, channelNames, clipOnAt, readyBy } = charge.card;
+    const { fixedBecause } = charge;
+    const dueAt = row ? row.dueAt : readyBy;
+    return { chargeId, title, rev, fixedBecause, stands: standsAt(charge), channelNames, clipOnAt, dueAt, charge };
+  }
+  if (!row) return null;
+  const channel = plan.channels.find(({ name }) => name === row.channelNames[0]);
+  const stands = channel ? { channelId: channel.id, clipOn: Date.parse(row.clipOnAt) } : null;
+  return { ...row, fixedBecause: null, stands, charge: null };
+}
+
 /** The soonest on a channel; null where it cannot be done there. */
 export const soonestOn = (places: MovePlacesDto, channelId: string): PlacedDto | null =>
   places.places.find((place) => place.channelId === channelId)?.soonest ?? null;
@@ -97,6 +127,32 @@ export function ghostSegments(segments: readonly Segment[], candidate: Candidate
   const scale = length / Math.max(60, end - begin);
   const moved = (s: number) => startS + (s - begin) * scale;
   return segments.map((one) => ({ ...one, fromS: moved(one.fromS), toS: moved(one.toS) }));
+}
+
+/** A charge at the place it would go to. */
+export interface Ghost {
+  title: string;
+  candidate: Candidate;
+  placed: PlacedDto;
+  /** Of the charge where it stands, seconds from its clip-on. */
+  segments: readonly Segment[];
+  hanging: boolean;
+}
+
+/** What is drawn of a charge at its candidate place. */
+export function ghostOf({ card }: PlanChargeDto, candidate: Candidate, placed: PlacedDto): Ghost {
+  const zero = Date.parse(card.clipOnAt);
+  return {
+    title: card.title,
+    candidate,
+    placed,
+    segments: card.segments.map(({ kind, from, to }) => ({
+      kind,
+      fromS: (Date.parse(from) - zero) / 1000,
+      toS: (Date.parse(to) - zero) / 1000,
+    })),
+    hanging: card.direction === 'discharge',
+  };
 }
 
 /** Whether a candidate is another place than the charge has. */

@@ -1,23 +1,12 @@
 import { View } from 'react-native';
-import type { Segment } from '@/calc/plan-types';
-import type { PlacedDto } from '@/shared/contract/bench-plan';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { OnSurface } from '../theme/surface';
 import { radius } from '../theme/tokens';
 import { WaitRibbon } from '../wait-ribbon/wait-ribbon';
 import { silhouette, rowHeight } from './lane-charge';
-import { ghostSegments, type Candidate } from './move-candidate';
+import { ghostSegments, type Ghost } from './move-candidate';
 import { toX, type PlanAxis } from './plan-axis';
-
-/** A charge at the place it would go to. */
-export interface Ghost {
-  title: string;
-  candidate: Candidate;
-  placed: PlacedDto;
-  segments: readonly Segment[];
-  hanging: boolean;
-}
 
 /** The silhouette where it would stand, in a dashed frame. Readers hear it from the words beside. */
 export function MoveGhost({ ghost, axis }: { ghost: Ghost; axis: PlanAxis }) {

@@ -15,12 +15,15 @@ export function QueuePart({
   now,
   picked,
   first,
+  noBetter = false,
   onPick,
 }: {
   queue: readonly QueueRowDto[];
   now: number;
   picked: string | null;
   first?: boolean;
+  /** It was looked for a better plan, and there is none. */
+  noBetter?: boolean;
   onPick: (chargeId: string) => void;
 }) {
   const styles = useStyles();
@@ -43,6 +46,11 @@ export function QueuePart({
           ))}
         </View>
       )}
+      {noBetter && queue.some((row) => row.lateByMinutes > 0) ? (
+        <Txt kind="small" tone="ink2">
+          No other plan of these charges is less late.
+        </Txt>
+      ) : null}
     </SideSection>
   );
 }
