@@ -38,7 +38,7 @@ export {
 export { learnedFactor, type ClosedCharge, type LearnedFactor } from './learn/learned-factor';
 
 // The planner and the running charge.
-export { planCharge } from './plan/plan-charge';
+export { planCharge, type OnlyWay } from './plan/plan-charge';
 export { soonestTerminals, type SoonestTerminals } from './plan/soonest-terminals';
 export { withTimeFactor } from './plan/time-factor';
 export { judgeCheck } from './plan/judge-check';
