@@ -6,7 +6,7 @@ export const sections = [
   { key: 'pack-types', title: 'Pack types', meaning: 'Groups, modules, and which group sits where' },
   { key: 'meters', title: 'Meters', meaning: 'Offset and last cross-check' },
   { key: 'resistors', title: 'Levelling resistors', meaning: 'For pre-levelling and neighbours' },
-  { key: 'limits', title: 'Limits', meaning: 'Tolerance, rest, look-ins, inrush, who decides' },
+  { key: 'limits', title: 'Limits', meaning: 'Tolerance, rest, look-ins, fit, inrush, who decides' },
   { key: 'hours', title: 'Name and hours', meaning: 'Name, time zone, working hours' },
   { key: 'walls', title: 'Walls', meaning: 'Screens that show the board' },
 ] as const;
