@@ -108,7 +108,7 @@ function HoursForm({ workshop, onBack }: { workshop: WorkshopDto; onBack: () => 
         hint={`Now ${clock(now, zone || 'UTC', marks)} there. Every time in the app is shown in it.`}
       />
       <FormPart title="Working hours" note="When somebody is there to clip on and to look in.">
-        <HoursFields form={f.form} />
+        <HoursFields form={f.form} name="workingHours" />
         <BoundCheck
           form={f.form}
           name="unattendedCharges"

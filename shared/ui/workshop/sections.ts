@@ -1,6 +1,9 @@
 /** The parts of the workshop's settings, in their order. */
 export const sections = [
   { key: 'people', title: 'People', meaning: 'Roles, invitations, links for a new password' },
+  { key: 'staffing', title: 'Hours of people', meaning: 'Own hours, breaks, days off, skills' },
+  { key: 'skills', title: 'Skills', meaning: 'What other work may ask for' },
+  { key: 'places', title: 'Places', meaning: 'Bays and benches where work is done' },
   { key: 'chargers', title: 'Chargers', meaning: 'Channels, what they give, who holds them now' },
   { key: 'module-types', title: 'Module types', meaning: 'Chemistry, limits of the maker, resistance' },
   { key: 'pack-types', title: 'Pack types', meaning: 'Groups, modules, and which group sits where' },
