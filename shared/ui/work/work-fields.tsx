@@ -102,7 +102,10 @@ function Unfolded({ form, choices, today }: { form: WorkFormOf; choices: WorkCho
         form={form}
         name="placeId"
         label={workNames.place}
-        options={[{ value: '', label: 'Any place' }, ...choices.places.map(({ id, name }) => ({ value: id, label: name }))]}
+        options={[
+          { value: '', label: 'Any place' },
+          ...choices.places.map(({ id, name }) => ({ value: id, label: name })),
+        ]}
       />
       <BoundSelect
         form={form}

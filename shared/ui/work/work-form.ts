@@ -49,8 +49,7 @@ export function workTexts(work: WorkDto, zone: string, today: string): WorkTyped
     skillId: work.skill?.id ?? '',
     placeId: work.place?.id ?? '',
     priority: work.priority,
-    dueAt:
-      due === null ? { day: today, time: '' } : { day: dayOf(due, zone), time: timeOfDayText(hour * 60 + minute) },
+    dueAt: due === null ? { day: today, time: '' } : { day: dayOf(due, zone), time: timeOfDayText(hour * 60 + minute) },
     repairId: work.repair?.id ?? '',
     splittable: work.splittable,
     note: work.note ?? '',

@@ -6,7 +6,7 @@ import { isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
 import { useGate } from '@/shared/client/gate';
 import { partState } from '@/shared/client/part-state';
-import { useRemovePlace, useSavePlace, useStaffing } from '@/shared/client/staffing';
+import { useAddPlace, useChangePlace, useRemovePlace, useStaffing } from '@/shared/client/staffing';
 import { placeKindNames, placeKinds, placeSchema, type PlaceDto, type PlaceKind } from '@/shared/contract/staffing';
 import { BoundField } from '@/shared/ui/forms/bound';
 import { Field } from '@/shared/ui/primitives/field';
@@ -63,7 +63,8 @@ export default function Place() {
 function PlaceForm({ place, onBack }: { place: PlaceDto | null; onBack: () => void }) {
   const toast = useToast();
   const gate = useGate('workshop:write');
-  const save = useSavePlace();
+  const add = useAddPlace();
+  const change = useChangePlace();
   const remove = useRemovePlace();
   const [initial] = useState(() => texts(place));
   const f = useContractForm({
@@ -72,7 +73,7 @@ function PlaceForm({ place, onBack }: { place: PlaceDto | null; onBack: () => vo
     draft: `place.${place?.id ?? 'new'}`,
     send: async (output) => {
       const rev = f.form.getValues('baseRev');
-      const saved = await save.mutateAsync(place ? { ...output, id: place.id, rev } : output);
+      const saved = place ? await change.mutateAsync({ ...output, id: place.id, rev }) : await add.mutateAsync(output);
       toast({ text: `${saved.name} is saved.` });
       onBack();
     },

@@ -4,7 +4,7 @@ import { isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
 import { useGate } from '@/shared/client/gate';
 import { partState } from '@/shared/client/part-state';
-import { useRemoveSkill, useSaveSkill, useStaffing } from '@/shared/client/staffing';
+import { useAddSkill, useChangeSkill, useRemoveSkill, useStaffing } from '@/shared/client/staffing';
 import { skillSchema, type SkillDto } from '@/shared/contract/staffing';
 import { BoundField } from '@/shared/ui/forms/bound';
 import { useToast } from '@/shared/ui/primitives/toast';
@@ -47,7 +47,8 @@ export default function Skill() {
 function SkillForm({ skill, onBack }: { skill: SkillDto | null; onBack: () => void }) {
   const toast = useToast();
   const gate = useGate('workshop:write');
-  const save = useSaveSkill();
+  const add = useAddSkill();
+  const change = useChangeSkill();
   const remove = useRemoveSkill();
   const texts = (of: SkillDto | null) => ({ name: of?.name ?? '', baseRev: of?.rev ?? 0 });
   const [initial] = useState(() => texts(skill));
@@ -57,7 +58,7 @@ function SkillForm({ skill, onBack }: { skill: SkillDto | null; onBack: () => vo
     draft: `skill.${skill?.id ?? 'new'}`,
     send: async (output) => {
       const rev = f.form.getValues('baseRev');
-      const saved = await save.mutateAsync(skill ? { ...output, id: skill.id, rev } : output);
+      const saved = skill ? await change.mutateAsync({ ...output, id: skill.id, rev }) : await add.mutateAsync(output);
       toast({ text: `${saved.name} is saved.` });
       onBack();
     },
