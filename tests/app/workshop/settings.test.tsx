@@ -24,6 +24,7 @@ function open(role: Role, width: 'phone' | 'wide', section?: string, answers: ty
   server = fakeServer(role);
   for (const path of ['chargers', 'meters', 'module-types', 'pack-types', 'resistors', 'walls', 'invitations'])
     server.answers[`GET /api/${path}`] = () => Response.json([]);
+  server.answers['GET /api/staffing'] = () => Response.json({ people: [], skills: [], places: [] });
   Object.assign(server.answers, answers);
   draw(<Workshop />);
 }
@@ -39,18 +40,21 @@ beforeEach(() => {
 afterEach(() => vi.unstubAllGlobals());
 
 describe('the settings of the workshop', () => {
-  it('are nine rows on the phone, each a way to its part', async () => {
+  it('are twelve rows on the phone, each a way to its part', async () => {
     open('manager', 'phone');
     fireEvent.click(await screen.findByText('Levelling resistors'));
     expect(router.push).toHaveBeenCalledWith('/workshop?section=resistors');
     expect(screen.queryByRole('region')).toBeNull();
   });
 
-  it('are nine parts on the desk; the walls stand last, at the side of those who approve them', async () => {
+  it('are twelve parts on the desk; the walls stand last, at the side of those who approve them', async () => {
     open('manager', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(9));
+    await waitFor(() => expect(parts()).toHaveLength(12));
     expect(parts()).toEqual([
       'People and roles',
+      'Hours of people',
+      'Skills',
+      'Places',
       'Chargers and channels',
       'Module types',
       'Pack types',
@@ -66,7 +70,7 @@ describe('the settings of the workshop', () => {
 
   it('can be read by a technician, with who may change them in place of the ways to do so', async () => {
     open('technician', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(9));
+    await waitFor(() => expect(parts()).toHaveLength(12));
     expect(await screen.findByText('No charger yet. Nothing can be planned without one.')).toBeTruthy();
     expect(screen.queryByText('add a charger')).toBeNull();
     expect(screen.queryByRole('button', { name: 'Make the invitation' })).toBeNull();
