@@ -45,7 +45,6 @@ export function useActs(renew: () => void) {
       take.mutate(
         {
           id: fit.work.id,
-          rev: fit.work.rev,
           personId,
           from: fit.span.from,
           ...(fit.work.splittable ? { minutes: fit.minutes } : {}),

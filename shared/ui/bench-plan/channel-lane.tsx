@@ -91,8 +91,9 @@ export function ChannelLane({
 
 /** From the silhouette to its end, at least as wide as its name. */
 function extentOf(piece: LanePiece, axis: PlanAxis): { left: number; right: number } {
-  const left = Math.max(0, toX(axis, piece.from));
-  return { left, right: Math.max(toX(axis, piece.to) + 4, left + labelWidth(piece.charge.card.title, null) + 12) };
+  const name = labelWidth(piece.charge.card.title, null) + 12;
+  const left = Math.max(0, Math.min(toX(axis, piece.from), axis.width - name));
+  return { left, right: Math.max(toX(axis, piece.to) + 4, left + name) };
 }
 
 function LaneRow({

@@ -39,10 +39,11 @@ export function placeLabels(
 ): { labels: PlacedLabel[]; hidden: number[] } {
   const sorted = [...pegs].sort((a, b) => a - b);
   const hidden: number[] = [];
+  const leftOf = ({ x, title }: LabelInput) => Math.max(0, Math.min(x, width - labelWidth(title, null)));
   const labels = row.map((label, index): PlacedLabel => {
-    const left = Math.max(0, label.x);
+    const left = leftOf(label);
     const next = row[index + 1];
-    const limit = next ? Math.max(0, next.x) - wordGap : width;
+    const limit = next ? leftOf(next) - wordGap : width;
     const free = (x: number, wide: number) =>
       x + wide <= limit && sorted.every((peg) => peg + pegRoom <= x || peg - pegRoom >= x + wide);
     const starts = [left, ...sorted.filter((peg) => peg > left - pegRoom).map((peg) => peg + pegRoom)];
@@ -52,7 +53,7 @@ export function placeLabels(
       if (x !== undefined) return { x, title: label.title, tag, width: wide };
     }
     const wide = labelWidth(label.title, null);
-    const x = Math.max(0, Math.min(left, width - wide));
+    const x = left;
     hidden.push(...sorted.filter((peg) => peg + pegRoom > x && peg - pegRoom < x + wide));
     return { x, title: label.title, tag: null, width: wide };
   });

@@ -15,8 +15,8 @@ const hourMs = 3_600_000;
 const halfHourMs = hourMs / 2;
 /** A charge that runs through the night does not squeeze the day: its lane ends this long after the work does. */
 const beyondWorkMs = 3 * hourMs;
-/** Room beside the first and the last thing on the axis. */
-const besideMs = 10 * 60_000;
+/** Room behind the last thing on the axis: the cap of a band is wider than its instant. */
+const behindMs = 10 * 60_000;
 
 /** px from the left end of the axis. */
 export const toX = (axis: PlanAxis, instant: number): number =>
@@ -51,8 +51,8 @@ export function dayAxis(plan: BenchPlanDto, now: number): { from: number; to: nu
     to = Math.max(to, now);
   }
   return {
-    from: Math.max(first, Math.floor((from - besideMs / 2) / halfHourMs) * halfHourMs),
-    to: Math.min(last, Math.ceil((to + besideMs) / halfHourMs) * halfHourMs),
+    from: Math.max(first, Math.floor(from / halfHourMs) * halfHourMs),
+    to: Math.min(last, Math.ceil((to + behindMs) / halfHourMs) * halfHourMs),
   };
 }
 
