@@ -1,6 +1,7 @@
 export * from './types';
 export * from './plan-types';
 export * from './live-types';
+export * from './bench/bench-types';
 export { CalcInputError } from './errors';
 export { isBeyondCurve, shiftCurve, slopeAtSoc, socAtVolts, voltsAtSoc } from './curve/ocv';
 export { chargeThroughTerminals } from './charge-through-terminals';
@@ -63,3 +64,9 @@ export {
   type CompareSourcesInput,
   type SourceComparison,
 } from './pack/compare-sources';
+
+// The bench plan: channels, other work, look-ins.
+export { planBench, earliestDueFirst } from './bench/plan-bench';
+export { planFills } from './bench/plan-fills';
+export { assignLookIns } from './bench/assign-look-ins';
+export { intersect, merge, subtract } from './bench/stretches';
