@@ -1,5 +1,5 @@
 /** What the bench plan needs of charges and repairs beyond their own screens. */
-import { In, IsNull, MoreThan, type EntityManager } from 'typeorm';
+import { In, IsNull, MoreThan, Not, type EntityManager } from 'typeorm';
 import { openStages } from '@/shared/contract/charge';
 import { Charge } from '../entities/charge';
 import { Repair } from '../entities/repair';
@@ -33,3 +33,13 @@ export const listWaitsSince = (manager: EntityManager, workshopId: string, since
     ],
     order: { fromAt: 'ASC', id: 'ASC' },
   });
+
+/** Targets that repairs were given, the latest first: what packs arrive with. */
+export const listTargets = (manager: EntityManager, workshopId: string, count: number): Promise<ArrivedRepair[]> =>
+  manager.find(Repair, {
+    where: { workshopId, deletedAt: IsNull(), target: Not(IsNull()) },
+    select: { id: true, packTypeId: true, moduleTypeId: true, target: true },
+    order: { bookedAt: 'DESC', id: 'ASC' },
+    take: count,
+  });
+export type ArrivedRepair = Pick<Repair, 'id' | 'packTypeId' | 'moduleTypeId' | 'target'>;

@@ -1,5 +1,6 @@
 /** Every routes file of the server; add yours here. */
 import { alertsRoutes } from './alerts.routes';
+import { benchPlanRoutes } from './bench-plan.routes';
 import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
 import { customersRoutes } from './customers.routes';
@@ -12,9 +13,11 @@ import { plansRoutes } from './plans.routes';
 import { repairsRoutes } from './repairs.routes';
 import { searchRoutes } from './search.routes';
 import { sessionRoutes } from './session.routes';
+import { staffingRoutes } from './staffing.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
 import { wallRoutes } from './wall.routes';
+import { workRoutes } from './work.routes';
 import { workshopRoutes } from './workshop.routes';
 
 export const routesModules: RoutesModule[] = [
@@ -32,6 +35,9 @@ export const routesModules: RoutesModule[] = [
   searchRoutes,
   chargesRoutes,
   boardRoutes,
+  benchPlanRoutes,
   alertsRoutes,
   waitsRoutes,
+  staffingRoutes,
+  workRoutes,
 ];

@@ -38,7 +38,8 @@ export interface EarlyStart {
 }
 export interface EarlyStartFound {
   spareId: string;
-  channelId: string;
+  /** Null: it rests there already. */
+  channelId: string | null;
   takesS: Band;
   /** Mean wait over the arrivals, without the start and after it, s. */
   withoutS: number;

@@ -8,7 +8,7 @@ import { channelNamesOf } from '../charge-steps';
 import { listText, titleOf } from '../charge-words';
 import { toInstant, toOptionalInstant } from '../instants';
 import { isRunning } from '../charge-stages';
-import { ownerOf, type BenchGround } from './ground';
+import { hasTime, ownerOf, type BenchGround } from './ground';
 import { endsOf, type HandBlock } from './hands';
 import type { Stretch } from './spans';
 
@@ -18,6 +18,11 @@ export interface GivenLookIn {
   doneAt: number | null;
   personId: string | null;
 }
+
+/** What a look-in takes where the workshop has not said, min. A guess of the trade. */
+const VISIT_MINUTES = 5;
+export const lookInMs = ({ workshop }: Pick<BenchGround, 'workshop'>): number =>
+  (workshop.lookInVisitMinutes ?? VISIT_MINUTES) * 60_000;
 
 /** Hands in something that cannot be left; a fit and other work can be. */
 const binds = ({ kind }: HandBlock): boolean => kind !== 'fit';
@@ -34,7 +39,9 @@ export function givenLookIns(ground: BenchGround, hands: ReadonlyMap<string, rea
       .filter(({ doneAt }) => doneAt !== null)
       .map(({ dueAt, doneAt, personId }): GivenLookIn => ({ file, dueAt, doneAt, personId })),
   );
-  const wanted = files.flatMap((file) => wantedOf(file, now).map((dueAt) => ({ file, dueAt })));
+  const wanted = files
+    .filter((file) => hasTime(file, now))
+    .flatMap((file) => wantedOf(file, now).map((dueAt) => ({ file, dueAt })));
   const seconds = ({ from, to }: Stretch) => ({ fromS: (from - now) / 1000, toS: (to - now) / 1000 });
   const given = assignLookIns(
     wanted.map(({ file, dueAt }, index) => ({
@@ -47,6 +54,7 @@ export function givenLookIns(ground: BenchGround, hands: ReadonlyMap<string, rea
       present: present.map(seconds),
       busy: (hands.get(id) ?? []).filter(binds).map(seconds),
     })),
+    lookInMs(ground) / 1000,
   );
   const personOf = new Map(given.map(({ lookInId, personId }) => [lookInId, personId]));
   const coming = wanted.map((one, index): GivenLookIn => ({

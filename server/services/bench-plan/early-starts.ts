@@ -39,10 +39,15 @@ export function earlyStarts(spares: readonly EarlyStart[]): EarlyStartFound[] {
 }
 
 function reckoned(start: PlanInput, arrivals: readonly number[]): Omit<EarlyStartFound, 'spareId'> | null {
-  const { option, refusals } = soonestTerminals(start);
-  const channelId = option?.channelIds[0];
-  if (refusals.length > 0 || option === null || channelId === undefined) return null;
+  const { option, alreadyWithin, refusals } = soonestTerminals(start);
+  if (refusals.length > 0 || (option === null && !alreadyWithin)) return null;
   const withoutS = meanWaitS(start, arrivals);
   const thenS = meanWaitS(restingAt(start, start.target.volts), arrivals);
-  return withoutS === null || thenS === null ? null : { channelId, takesS: option.totalS, withoutS, thenS };
+  if (withoutS === null || thenS === null) return null;
+  return {
+    channelId: option?.channelIds[0] ?? null,
+    takesS: option?.totalS ?? { p10: 0, p50: 0, p90: 0 },
+    withoutS,
+    thenS,
+  };
 }

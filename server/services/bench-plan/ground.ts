@@ -79,6 +79,10 @@ export function ownerOf({ people, repairs }: BenchGround, { charge }: Pick<Charg
   return repairs.get(charge.repairId ?? '')?.personIds.find((id) => here.has(id)) ?? null;
 }
 
+/** A charge that begun, or has a time to begin at. A plan whose time has passed without anybody queuing it has none. */
+export const hasTime = ({ charge }: Pick<ChargeFile, 'charge'>, now: number): boolean =>
+  charge.stage !== 'planned' || charge.clipOnAt >= now;
+
 /** When a charge is due: its own wish, else what its repair was promised for; null: whenever. */
 export const dueOf = ({ repairs }: BenchGround, { charge }: Pick<ChargeFile, 'charge'>): number | null =>
   charge.readyBy ?? repairs.get(charge.repairId ?? '')?.repair.promisedAt ?? null;

@@ -7,7 +7,7 @@ import { isWaitingToStart } from '../charge-stages';
 import { plainAmpsText } from '../charge-words';
 import { toInstant } from '../instants';
 import { lookInDto, type GivenLookIn } from './charge-look-ins';
-import type { BenchGround } from './ground';
+import { hasTime, type BenchGround } from './ground';
 import { heldSpans } from './held-spans';
 import { overlaps } from './spans';
 
@@ -54,18 +54,25 @@ export function planCharges(
   lookIns: readonly GivenLookIn[],
 ): PlanChargeDto[] {
   const { files, days, now } = ground;
-  return files.flatMap((file) => {
-    const holds = heldSpans(file, now);
-    const card = chargeCard(file, now);
-    const times = [...holds, ...card.segments.map(({ from, to }) => ({ from: Date.parse(from), to: Date.parse(to) }))];
-    if (!times.some((one) => overlaps(one, days))) return [];
-    return [
-      {
-        card,
-        holds: holds.map(({ channelId, from, to }) => ({ channelId, from: toInstant(from), to: toInstant(to) })),
-        fixedBecause: fixedBecause(file, stuck),
-        lookIns: lookIns.filter((one) => one.file === file && one.doneAt === null).map((one) => lookInDto(ground, one)),
-      },
-    ];
-  });
+  return files
+    .filter((file) => hasTime(file, now))
+    .flatMap((file) => {
+      const holds = heldSpans(file, now);
+      const card = chargeCard(file, now);
+      const times = [
+        ...holds,
+        ...card.segments.map(({ from, to }) => ({ from: Date.parse(from), to: Date.parse(to) })),
+      ];
+      if (!times.some((one) => overlaps(one, days))) return [];
+      return [
+        {
+          card,
+          holds: holds.map(({ channelId, from, to }) => ({ channelId, from: toInstant(from), to: toInstant(to) })),
+          fixedBecause: fixedBecause(file, stuck),
+          lookIns: lookIns
+            .filter((one) => one.file === file && one.doneAt === null)
+            .map((one) => lookInDto(ground, one)),
+        },
+      ];
+    });
 }

@@ -1,4 +1,5 @@
 /** The lines of people: hands, fits, other work, look-ins, and what is free between. */
+import { DateTime } from 'luxon';
 import type { FreeStretchDto, PlanBlockDto, PlanPersonDto } from '@/shared/contract/bench-plan';
 import type { WorkStint } from '../../entities/work-stint';
 import type { ChargeFile } from '../charge-file';
@@ -6,7 +7,7 @@ import { isOpen } from '../charge-stages';
 import { titleOf } from '../charge-words';
 import { toInstant } from '../instants';
 import { givenLookIns, lookInDto, type GivenLookIn } from './charge-look-ins';
-import { ownerOf, type BenchGround } from './ground';
+import { hasTime, ownerOf, type BenchGround } from './ground';
 import type { GroundPerson } from './ground-people';
 import { endsOf, handsOf, type HandBlock } from './hands';
 import { freeIn, laidOut } from './lines';
@@ -32,7 +33,7 @@ export function linesOf(ground: BenchGround): Lines {
   const { now, people, files, stints, workshop } = ground;
   const fitMs = (workshop.fitMinutes ?? FIT_MINUTES) * 60_000;
   const wanted = new Map<string, HandBlock[]>();
-  for (const file of files) {
+  for (const file of files.filter((one) => hasTime(one, now))) {
     const owner = ownerOf(ground, file);
     const repair = ground.repairs.get(file.charge.repairId ?? '')?.repair ?? null;
     const fits = repair !== null && (isOpen(file.charge.stage) || file.charge.stage === 'fitted');
@@ -115,7 +116,7 @@ const isIn = (at: number, { from, to }: Stretch): boolean => at >= from && at < 
 
 /** Days of one zone compare as their names do; the last one is that of the last instant. */
 function isShown({ days, workshop }: BenchGround, day: string): boolean {
-  const last = new Intl.DateTimeFormat('en-CA', { timeZone: workshop.zone }).format(days.to - 1);
+  const last = DateTime.fromMillis(days.to - 1, { zone: workshop.zone }).toFormat('yyyy-MM-dd');
   return day >= days.day && day <= last;
 }
 

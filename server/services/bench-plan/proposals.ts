@@ -17,7 +17,7 @@ import { united, type Stretch } from './spans';
 
 /** A minute less of lateness is worth a change; all being ready a few minutes sooner is not, ms. */
 const LEAST_LATE_MS = 60_000;
-const LEAST_SOONER_MS = 15 * 60_000;
+const LEAST_SOONER_MS = 30 * 60_000;
 
 export interface ProposedMove {
   movable: Movable;
@@ -79,17 +79,20 @@ export const pushed = ({ movables, origin }: BenchModel, present: Placements): M
 
 function problemOf(model: BenchModel): BenchProblem {
   const { origin, movables, taken, ground } = model;
-  const seconds = ({ from, to }: Stretch) => ({ fromS: (from - origin) / 1000, toS: (to - origin) / 1000 });
+  // Whole minutes, rounded to the safe side: nobody clips on at 11:58:38.
+  const seconds = ({ from, to }: Stretch) => ({ fromS: minuteUp(from - origin), toS: minuteDown(to - origin) });
+  const wide = ({ from, to }: Stretch) => ({ fromS: minuteDown(from - origin), toS: minuteUp(to - origin) });
+  const isSome = ({ fromS, toS }: { fromS: number; toS: number }): boolean => toS > fromS;
   const ids = ground.channels.map(({ id }) => id);
   return {
-    taken: ids.map((channelId) => united(taken.filter((one) => one.channelId === channelId)).map(seconds)),
+    taken: ids.map((channelId) => united(taken.filter((one) => one.channelId === channelId)).map(wide)),
     jobs: movables.map((movable) => ({
       id: idOf(movable),
       dueS: movable.dueAt === null ? null : (movable.dueAt - origin) / 1000,
       weight: movable.weight,
       alternatives: movable.alternatives.map((alternative) => ({
         channels: alternative.channelIds.map((channelId) => ids.indexOf(channelId)),
-        busyS: alternative.busyS,
+        busyS: minuteUp(alternative.busyS * 1000),
         readyS: alternative.totalS.p50,
         guardS: alternative.totalS.p90,
         mayStart: mayBegin(model, movable.file, alternative.busyS * 1000).map(seconds),
@@ -97,6 +100,9 @@ function problemOf(model: BenchModel): BenchProblem {
     })),
   };
 }
+
+const minuteUp = (ms: number): number => Math.ceil(ms / 60_000) * 60;
+const minuteDown = (ms: number): number => Math.floor(ms / 60_000) * 60;
 
 function placementsOf({ movables, origin }: BenchModel, { placements }: BenchSolution): Placements {
   const byId = new Map(movables.map((movable) => [idOf(movable), movable]));
