@@ -9,7 +9,7 @@ import type { WebKeyEvent } from '../theme/web-props';
 import { chargeTag, latenessWords, placeWords } from './charge-words';
 import { LaneCharge, rowHeight } from './lane-charge';
 import { labelWidth, placeLabels } from './lane-labels';
-import { lanePieces, packRows, type LanePiece } from './lane-pieces';
+import { lanePieces, packRows, queueDots, type LanePiece } from './lane-pieces';
 import type { Ghost } from './move-candidate';
 import { MoveGhost } from './move-ghost';
 import { toX, type PlanAxis } from './plan-axis';
@@ -147,6 +147,7 @@ function LaneRow({
           <LaneCharge
             key={id}
             piece={piece}
+            dots={queueDots(row, index, axis.from)}
             channelName={channel.name}
             axis={axis}
             at={at}

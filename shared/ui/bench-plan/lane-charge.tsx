@@ -1,4 +1,5 @@
 import { Pressable, View } from 'react-native';
+import type { Segment } from '@/calc/plan-types';
 import { Circle, Path, Svg } from 'react-native-svg';
 import { useFormats } from '../format/formats';
 import { Txt } from '../primitives/txt';
@@ -23,6 +24,7 @@ export const silhouette = { top: 29, height: 38, padTop: 8 } as const;
 /** One charge in a lane: silhouette, name, look-ins, and the button over them. */
 export function LaneCharge({
   piece,
+  dots,
   channelName,
   axis,
   at,
@@ -36,6 +38,8 @@ export function LaneCharge({
   onKey,
 }: {
   piece: LanePiece;
+  /** It waits in the queue until then. */
+  dots: Segment | null;
   channelName: string;
   axis: PlanAxis;
   at: CardClock;
@@ -68,7 +72,7 @@ export function LaneCharge({
     <View role="listitem" style={styles.item}>
       <View style={[styles.ribbon, dim && styles.dim]} aria-hidden>
         <WaitRibbon
-          segments={piece.segments}
+          segments={dots ? [dots, ...piece.segments] : piece.segments}
           fromS={0}
           toS={(axis.to - axis.from) / 1000}
           width={axis.width}

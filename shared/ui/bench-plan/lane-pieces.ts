@@ -13,7 +13,9 @@ export interface LanePiece {
   band: Band | null;
   lookIns: LookIn[];
   ribbon: CardRibbon;
-  /** First and last mark, epoch ms. */
+  /** Since when it waits for this channel, s; null: it does not. Drawn as dots, where the lane is empty meanwhile. */
+  queueFromS: number | null;
+  /** First and last mark, epoch ms; the dots of the queue are none. */
   from: number;
   to: number;
 }
@@ -48,7 +50,8 @@ export function lanePieces(
         const first = holds.every(({ from }) => Date.parse(from) >= Date.parse(hold.from) - 1000);
         const fromS = first ? -Infinity : (Date.parse(hold.from) + moved - zero) / 1000;
         const toS = last ? Infinity : (Date.parse(hold.to) + moved - zero) / 1000;
-        const segments = within(ribbon.segments, fromS, toS);
+        const all = within(ribbon.segments, fromS, toS);
+        const segments = all.filter(({ kind }) => kind !== 'queue');
         const band = last ? ribbon.band : null;
         const begin = segments[0]?.fromS ?? (Date.parse(hold.from) + moved - zero) / 1000;
         const stop = Math.max(segments.at(-1)?.toS ?? begin + 60, band?.p90 ?? -Infinity);
@@ -58,6 +61,7 @@ export function lanePieces(
           segments,
           band,
           ribbon,
+          queueFromS: all.find(({ kind }) => kind === 'queue')?.fromS ?? null,
           lookIns: ribbon.lookIns.filter(({ s }) => s >= fromS && s <= toS),
           from: zero + begin * 1000,
           to: zero + stop * 1000,
@@ -79,4 +83,17 @@ export function packRows<P>(pieces: readonly P[], extent: (piece: P) => { left: 
     } else rows.push({ right, pieces: [piece] });
   }
   return rows.map((row) => row.pieces);
+}
+
+/**
+ * The dots in front of a silhouette: from when its charge is queued, but not over the charge that stands before it in its
+ * row. Seconds from `zero`; null: there is no room for any.
+ */
+export function queueDots(row: readonly LanePiece[], index: number, zero: number): Segment | null {
+  const piece = row[index];
+  if (!piece || piece.queueFromS === null) return null;
+  const before = row[index - 1];
+  const fromS = Math.max(piece.queueFromS, before ? (before.to - zero) / 1000 + 60 : -Infinity);
+  const toS = (piece.from - zero) / 1000;
+  return fromS < toS ? { kind: 'queue', fromS, toS } : null;
 }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { labelWidth, placeLabels } from '@/shared/ui/bench-plan/lane-labels';
-import { lanePieces, packRows } from '@/shared/ui/bench-plan/lane-pieces';
+import { lanePieces, packRows, queueDots } from '@/shared/ui/bench-plan/lane-pieces';
 import { personDocks, personPegs } from '@/shared/ui/bench-plan/person-pieces';
 import { axisTicks, dayAxis, flagWidth, flagX, nowX, toInstant, toX } from '@/shared/ui/bench-plan/plan-axis';
 import { at, charges, iso, now, people, plan, planned, zone } from '../../../app/bench-plan/plan-of';
@@ -218,5 +218,33 @@ describe('the lane of a person', () => {
     ]);
     const missed = personPegs(looks, axis, now, wording)[0]!;
     expect([missed.missed, missed.label]).toEqual([true, 'Look-in at R-2411, A2, missed 12:50']);
+  });
+});
+
+describe('the dots of a charge that is queued', () => {
+  const queued = (from: string) =>
+    planned('R-2440', 'b1', 'queued', [
+      ['queue', from, '14:00'],
+      ['cc', '14:00', '15:00'],
+    ]);
+  const dots = (from: string) => {
+    const row = lanePieces(
+      { charges: [charges.find(({ card }) => card.title === 'R-2408')!, queued(from)] },
+      'b1',
+      clock,
+      axis.from,
+    );
+    const found = queueDots(row, 1, axis.from);
+    return found && [axis.from + found.fromS * 1000, axis.from + found.toS * 1000];
+  };
+
+  it('begin when it is queued, and not before the charge in front has left: 13:45, and 13:33 for one queued at 9', () => {
+    expect(dots('13:45')).toEqual([at('13:45'), at('14:00')]);
+    expect(dots('09:00')).toEqual([at('13:33'), at('14:00')]);
+  });
+
+  it('make its silhouette no longer: it begins at its clip-on', () => {
+    const [piece] = lanePieces({ charges: [queued('09:00')] }, 'b1', clock, axis.from);
+    expect(piece!.from).toBe(at('14:00'));
   });
 });
