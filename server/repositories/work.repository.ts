@@ -31,6 +31,10 @@ export const listOpenWorkOf = (
   named: { skillId: string } | { placeId: string } | { repairId: string },
 ): Promise<Work[]> => manager.find(Work, { where: { workshopId, overAt: IsNull(), ...named }, order: { id: 'ASC' } });
 
+/** Work for a repair that is done or dropped. */
+export const listOverWorkOf = (manager: EntityManager, workshopId: string, repairId: string): Promise<Work[]> =>
+  manager.find(Work, { where: { workshopId, repairId, overAt: Not(IsNull()) }, order: { id: 'ASC' } });
+
 export async function workById(
   manager: EntityManager,
   workshopId: string,

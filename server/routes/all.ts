@@ -12,9 +12,11 @@ import { plansRoutes } from './plans.routes';
 import { repairsRoutes } from './repairs.routes';
 import { searchRoutes } from './search.routes';
 import { sessionRoutes } from './session.routes';
+import { staffingRoutes } from './staffing.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
 import { wallRoutes } from './wall.routes';
+import { workRoutes } from './work.routes';
 import { workshopRoutes } from './workshop.routes';
 
 export const routesModules: RoutesModule[] = [
@@ -34,4 +36,6 @@ export const routesModules: RoutesModule[] = [
   boardRoutes,
   alertsRoutes,
   waitsRoutes,
+  staffingRoutes,
+  workRoutes,
 ];
