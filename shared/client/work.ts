@@ -13,15 +13,15 @@ import { roots } from './query-keys';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
-export type WorkFilter = Pick<WorkQuery, 'state'>;
+export type WorkFilter = Pick<WorkQuery, 'state' | 'repairId'>;
 
 /** Work that is not over, or that is, page by page; the last list stays while the next one comes. */
 export const workListQuery = (filter: WorkFilter = {}) =>
   infiniteQueryOptions({
-    queryKey: [roots.work, 'list', filter.state ?? 'open'],
+    queryKey: [roots.work, 'list', filter.state ?? 'open', filter.repairId ?? null],
     queryFn: ({ pageParam, signal }) =>
       api.get<WorkListDto>('/work', {
-        query: { state: filter.state, page: pageParam > 1 ? pageParam : undefined },
+        query: { ...filter, page: pageParam > 1 ? pageParam : undefined },
         signal,
       }),
     initialPageParam: 1,

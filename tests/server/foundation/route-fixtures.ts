@@ -8,6 +8,7 @@ import { twoHalves } from '@/tests/support/pictures';
 import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
+import { benchFixtures } from './route-fixtures-bench';
 
 export interface Fit {
   /** Path parameters. */
@@ -58,6 +59,10 @@ const meter = { name: 'One more', offsetMillivolts: '1', checkedAt: null };
 export const routeFixtures: Record<string, RouteFixture> = {
   'GET /healthz': { who: 'anyone' },
   'GET /readyz': { who: 'anyone' },
+  'GET /metrics': { who: 'anyone', anyoneHears: 404 },
+  'GET /api/status': manager(),
+  'POST /api/status/backup': manager(),
+  'GET /api/export.zip': manager(),
 
   'GET /api/front-door': { who: 'anyone' },
   'POST /api/session': {
@@ -310,4 +315,6 @@ export const routeFixtures: Record<string, RouteFixture> = {
   })),
   'GET /api/waits': foreman(),
   'GET /api/waits.csv': foreman(),
+
+  ...benchFixtures,
 };

@@ -1,0 +1,77 @@
+import { lazy, Suspense } from 'react';
+import { View } from 'react-native';
+import { useFormats } from '@/shared/ui/format/formats';
+import { placeWords } from '@/shared/ui/bench-plan/charge-words';
+import { BottomSheet } from '@/shared/ui/primitives/bottom-sheet';
+import { makeStyles } from '@/shared/ui/theme/make-styles';
+import type { Move } from './use-move';
+
+const MovePanel = lazy(() => import('@/shared/ui/bench-plan/move-panel').then((part) => ({ default: part.MovePanel })));
+
+/** The picked charge with its places: in the side column of the desk, in a sheet elsewhere. */
+export function PlanMove({
+  move,
+  sheet,
+  now,
+  today,
+  offline,
+  onGo,
+}: {
+  move: Move;
+  sheet: boolean;
+  now: number;
+  today: string;
+  offline: boolean;
+  onGo: (path: string) => void;
+}) {
+  const styles = useStyles();
+  const formats = useFormats();
+  const { subject } = move;
+  if (!subject) return null;
+  const panel = (
+    <Suspense fallback={<View style={styles.coming} />}>
+      <MovePanel
+        title={subject.title}
+        chargeId={subject.chargeId}
+        stands={subject.channelNames.length === 0 ? null : placeWords(subject, now, formats)}
+        dueAt={subject.dueAt}
+        fixedBecause={subject.fixedBecause}
+        places={move.places}
+        placesProblem={move.placesProblem}
+        candidate={move.candidate}
+        placed={move.placed}
+        other={move.other}
+        taken={move.taken}
+        typed={move.typed}
+        timeError={move.timeError}
+        today={today}
+        now={now}
+        busy={move.busy}
+        offline={offline}
+        problem={move.problem}
+        onChannel={move.toChannel}
+        onTyped={move.type}
+        onStep={move.step}
+        onRetry={move.retryPlaces}
+        onMove={move.move}
+        onLeave={move.leave}
+        onGo={onGo}
+      />
+    </Suspense>
+  );
+  if (!sheet) return <View style={styles.panel}>{panel}</View>;
+  return (
+    <BottomSheet
+      open
+      title={subject.fixedBecause === null ? `Move ${subject.title}` : subject.title}
+      onClose={move.leave}
+    >
+      {panel}
+    </BottomSheet>
+  );
+}
+
+const useStyles = makeStyles(({ colors }) => ({
+  panel: { borderBottomWidth: 1.5, borderBottomColor: colors.edge, paddingBottom: 14 },
+  coming: { minHeight: 200 },
+}));
