@@ -6,6 +6,7 @@ import type { Config } from './config';
 import type { Lifecycle } from './lifecycle';
 import type { LiveHub } from './live/hub';
 import type { Sleeper } from './live/sleeper';
+import type { BenchSolver } from './services/bench-plan/bench-solver';
 import type { Limits } from './services/limits';
 import type { Passwords } from './services/passwords';
 import type { Secrets } from './services/secrets';
@@ -21,6 +22,8 @@ export interface Deps {
   lifecycle: Lifecycle;
   /** Hashes and compares off the event loop. */
   passwords: Passwords;
+  /** Reckons for the bench plan off the event loop. */
+  bench: BenchSolver;
   /** Keys of this installation. */
   secrets: Secrets;
   /** Throttles, kept in memory. */

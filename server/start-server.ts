@@ -15,6 +15,7 @@ import { makeSleeper } from './live/sleeper-loop';
 import { makeSocketHub } from './live/socket-hub';
 import { proxyMetroUpgrades } from './middleware/metro-proxy';
 import { migrate } from './migrate';
+import { makeBenchSolver } from './services/bench-plan/bench-solver';
 import { makeLimits } from './services/limits';
 import { makePasswords } from './services/passwords';
 import { loadSecrets } from './services/secrets';
@@ -74,6 +75,7 @@ export async function startServer(config: Config, log: Logger, clock: Clock = sy
   const dataSource = await makeDataSource(databaseFile(config.dataDir)).initialize();
   const lifecycle: Lifecycle = { ready: false };
   const passwords = makePasswords();
+  const bench = makeBenchSolver();
   try {
     await assertDurable(dataSource);
     const migrations = await migrate(dataSource, config.dataDir, clock.now(), log);
@@ -81,7 +83,7 @@ export async function startServer(config: Config, log: Logger, clock: Clock = sy
     const hub = makeSocketHub({ config, dataSource, secrets, clock, log });
     const sleeper = makeSleeper({ dataSource, clock, log, hub });
     const limits = makeLimits();
-    const deps: Deps = { dataSource, clock, config, log, hub, sleeper, lifecycle, passwords, secrets, limits };
+    const deps: Deps = { dataSource, clock, config, log, hub, sleeper, lifecycle, passwords, bench, secrets, limits };
     if (config.demo) await seedDemo(deps);
     const app = createApp(deps);
     const server = config.tls ? https.createServer(config.tls, app) : http.createServer(app);
@@ -99,12 +101,14 @@ export async function startServer(config: Config, log: Logger, clock: Clock = sy
       await quietly(hub.close(), log, 'the sockets did not close');
       clearTimeout(drained);
       await quietly(passwords.close(), log, 'the hashing threads did not end');
+      await quietly(bench.close(), log, 'the thread of the bench plan did not end');
       await quietly(dataSource.query('PRAGMA wal_checkpoint(TRUNCATE)'), log, 'the write-ahead log was not emptied');
       await quietly(dataSource.destroy(), log, 'the database did not close');
     };
     return { address: addressOf(config, port), port, deps, stop };
   } catch (error) {
     await passwords.close();
+    await bench.close();
     await dataSource.destroy();
     throw error;
   }

@@ -1,5 +1,6 @@
 /** Every routes file of the server; add yours here. */
 import { alertsRoutes } from './alerts.routes';
+import { benchPlanRoutes } from './bench-plan.routes';
 import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
 import { customersRoutes } from './customers.routes';
@@ -34,6 +35,7 @@ export const routesModules: RoutesModule[] = [
   searchRoutes,
   chargesRoutes,
   boardRoutes,
+  benchPlanRoutes,
   alertsRoutes,
   waitsRoutes,
   staffingRoutes,

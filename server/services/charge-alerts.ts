@@ -10,6 +10,7 @@ import { alertsOfCharge, insertAlert, updateAlert } from '../repositories/alerts
 import {
   chargeDoneText,
   checkDueText,
+  lookInMissedText,
   lookInText,
   oddText,
   overdueText,
@@ -18,11 +19,12 @@ import {
 } from './charge-alert-texts';
 import { isChecked, overdueSince, TOLD_AGAIN_MS } from './charge-due';
 import type { ChargeFile } from './charge-file';
-import { dueLookIn } from './charge-look-ins';
+import { dueLookIn, missedLookIn } from './charge-look-ins';
 import { readingInstantOf } from './charge-clock';
 import { isUnderWay, swapWait } from './charge-stages';
 import { durationText } from './charge-words';
 import { newId } from './ids';
+import { isAnybodyThere, lookInPerson } from './look-in-person';
 
 /** An alert that comes this much after its cause says so, s. */
 const LATE_S = 120;
@@ -63,7 +65,17 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
       text: stepSwapText(file, swap),
     });
   const lookIn = dueLookIn(file, now);
-  if (lookIn !== null)
+  const missed = missedLookIn(file, now);
+  if (missed !== null)
+    wanted.push({
+      kind: 'look-in-missed',
+      level: 'amber',
+      since: missed.dueAt,
+      key: missed.id,
+      text: lookInMissedText(file, now),
+    });
+  // What was missed is told as that; of those due since it the last is still asked for.
+  if (lookIn !== null && lookIn !== missed)
     wanted.push({ kind: 'look-in-due', level: 'tell', since: lookIn.dueAt, key: lookIn.id, text: lookInText(file) });
   const odd = isUnderWay(charge.stage) ? (charge.reckoning?.reckoning.odd ?? null) : null;
   if (odd !== null)
@@ -100,7 +112,7 @@ export async function syncAlerts(
   const { charge } = file;
   const all = await alertsOfCharge(manager, charge.workshopId, charge.id);
   const changes: AlertChanges = { raised: [], changed: [] };
-  const wanted = wantedAlerts(file, now);
+  const wanted = await withoutUnattended(manager, file, wantedAlerts(file, now), now);
   for (const alert of all.filter((one) => one.clearedAt === null)) {
     const match = wanted.find((one) => one.kind === alert.kind && isCauseOf(one, alert));
     if (match) {
@@ -115,7 +127,8 @@ export async function syncAlerts(
     if (all.some((one) => one.clearedAt === null && one.kind === want.kind)) continue;
     const cause = causeOf(charge.id, want, all);
     if (all.some((one) => one.cause === cause)) continue;
-    const alert = newAlert(file, want, cause, now, dueWas);
+    const personId = await personFor(manager, file, want, now);
+    const alert = newAlert(file, want, cause, personId, now, dueWas);
     await insertAlert(manager, alert);
     all.push(alert);
     changes.raised.push(alert);
@@ -138,7 +151,32 @@ function isToldAgain(want: Wanted, alert: Alert, now: number, dueWas: number | n
   return TOLD_AGAIN_MS.some((wait) => want.since + wait >= dueWas && want.since + wait <= now);
 }
 
-function newAlert(file: ChargeFile, want: Wanted, cause: string, now: number, dueWas: number | null): Alert {
+const isLookIn = ({ kind }: Wanted): boolean => kind === 'look-in-due' || kind === 'look-in-missed';
+
+/** Where charges may run unattended nobody has missed a look-in while nobody is there. It is told when somebody comes. */
+async function withoutUnattended(
+  manager: EntityManager,
+  file: ChargeFile,
+  wanted: Wanted[],
+  now: number,
+): Promise<Wanted[]> {
+  if (file.workshop.unattendedCharges !== true || !wanted.some(({ kind }) => kind === 'look-in-missed')) return wanted;
+  if (await isAnybodyThere(manager, file, now)) return wanted;
+  return wanted.filter(({ kind }) => kind !== 'look-in-missed');
+}
+
+/** Whom it is for: a look-in is whose the bench plan gives it to, all else the charge's own person's. */
+const personFor = async (manager: EntityManager, file: ChargeFile, want: Wanted, now: number): Promise<string | null> =>
+  (isLookIn(want) ? await lookInPerson(manager, file, now) : null) ?? file.charge.personId;
+
+function newAlert(
+  file: ChargeFile,
+  want: Wanted,
+  cause: string,
+  personId: string | null,
+  now: number,
+  dueWas: number | null,
+): Alert {
   const { charge } = file;
   const lateByS = dueWas === null ? 0 : Math.max(0, Math.round((now - Math.max(want.since, dueWas)) / 1000));
   return {
@@ -148,7 +186,7 @@ function newAlert(file: ChargeFile, want: Wanted, cause: string, now: number, du
     kind: want.kind,
     level: want.level,
     chargeId: charge.id,
-    personId: charge.personId,
+    personId,
     title: want.text.title,
     seen: lateByS >= LATE_S ? `${want.text.seen} Told ${durationText(lateByS)} late.` : want.text.seen,
     checkFirst: want.text.checkFirst,

@@ -11,6 +11,7 @@ const rules: Record<AlertKind, { sound: SoundName; after: readonly number[]; eve
   'step-swap': { sound: 'check-due', after: again },
   overdue: { sound: 'overdue', after: [0], everyMs: minute },
   'look-in-due': { sound: 'look-in', after: [0] },
+  'look-in-missed': { sound: 'look-in', after: again },
   // It asks for a look, not for a hand by the minute: heard once.
   'odd-reading': { sound: 'overdue', after: [0] },
 };

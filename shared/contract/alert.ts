@@ -1,7 +1,15 @@
 import * as z from 'zod/mini';
 import { id, type Instant, type PersonRef } from './common';
 
-export const alertKinds = ['charge-done', 'check-due', 'overdue', 'look-in-due', 'step-swap', 'odd-reading'] as const;
+export const alertKinds = [
+  'charge-done',
+  'check-due',
+  'overdue',
+  'look-in-due',
+  'look-in-missed',
+  'step-swap',
+  'odd-reading',
+] as const;
 export type AlertKind = (typeof alertKinds)[number];
 
 export interface AlertDto {

@@ -15,6 +15,7 @@ const looks: Record<AlertKind, AlertLook> = {
   'charge-done': { mark: 'resting', word: 'Current is over' },
   'step-swap': { mark: 'check-due', word: 'A hand is needed' },
   'look-in-due': { mark: 'queued', word: 'Look-in due' },
+  'look-in-missed': { mark: 'check-due', word: 'Look-in missed' },
   'odd-reading': { mark: 'overdue', word: 'Odd reading' },
 };
 export const lookOf = (alert: AlertDto): AlertLook => looks[alert.kind];
@@ -33,7 +34,7 @@ export function whose(alert: AlertDto, personId: string): string {
 export function stepOf(alert: AlertDto, card: ChargeCardDto | undefined): { title: string; path: string } {
   const live = `/charges/${alert.chargeId}`;
   if (alert.kind === 'check-due') return { title: 'Check now', path: `${live}/check` };
-  if (alert.kind === 'look-in-due' || alert.kind === 'odd-reading')
+  if (alert.kind === 'look-in-due' || alert.kind === 'look-in-missed' || alert.kind === 'odd-reading')
     return { title: 'Log a reading', path: `${live}/log` };
   if (alert.kind === 'overdue' && card && !waitsForSwap(card)) {
     if (card.stage === 'check-due') return { title: 'Check now', path: `${live}/check` };

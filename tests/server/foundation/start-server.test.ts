@@ -190,6 +190,7 @@ beforeAll(async () => {
     entryPoints: [
       { in: 'server/index.ts', out: 'main' },
       { in: 'server/workers/bcrypt.ts', out: 'workers/bcrypt' },
+      { in: 'server/workers/bench.ts', out: 'workers/bench' },
     ],
     outdir: bundle,
     bundle: true,
