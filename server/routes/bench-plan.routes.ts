@@ -4,6 +4,7 @@ import { day, id } from '@/shared/contract/common';
 import { paperQuerySchema } from '@/shared/contract/papers';
 import { benchPlan, myDay } from '../services/bench-plan/bench-plan.service';
 import { daySheetPaper } from '../services/bench-plan/day-sheet-paper.service';
+import { fits } from '../services/bench-plan/fits.service';
 import { moveCharge, movePlaces } from '../services/bench-plan/moves.service';
 import { acceptProposal, proposal } from '../services/bench-plan/proposal.service';
 import { startNow } from '../services/bench-plan/start-now.service';
@@ -62,6 +63,12 @@ export const benchPlanRoutes: RoutesModule = (route) => {
     policy: plan,
     query: z.object({ chargeId: id }),
     handle: ({ deps, member, query, now }) => movePlaces(deps, member, query.chargeId, now),
+  });
+  route({
+    method: 'get',
+    path: '/bench-plan/fits',
+    policy: read,
+    handle: ({ deps, member, now }) => fits(deps, member, now),
   });
   route({
     method: 'get',

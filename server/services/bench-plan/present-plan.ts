@@ -15,6 +15,9 @@ import type { HeldSpan } from './held-spans';
 /** A place this much off the planned one is the planned one still, ms. */
 export const SAME_MS = 5 * 60_000;
 
+/** Nobody clips on at 11:58:38. */
+const wholeMinute = (at: number): number => Math.ceil(at / 60_000) * 60_000;
+
 export type Placements = Map<string, Placed>;
 export const idOf = ({ file }: Movable): string => file.charge.id;
 
@@ -34,7 +37,7 @@ export function presentPlan(model: BenchModel): Placements {
       present.busyMs,
       wished,
     );
-    const placed = { ...present, at: begins ?? wished };
+    const placed = { ...present, at: begins === null || begins === wished ? wished : wholeMinute(begins) };
     placements.set(idOf(movable), placed);
     taken.push(...spansOf(placed));
   }

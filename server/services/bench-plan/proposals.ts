@@ -2,7 +2,8 @@
 import { createHash } from 'node:crypto';
 import type { BenchProblem, BenchSolution } from '@/calc/bench/bench-types';
 import type { BenchSolver } from './bench-solver';
-import { mayBegin, placedBy, type BenchModel, type Movable, type Placed } from './bench-model';
+import { mayBegin, onChannels, placedBy, type BenchModel, type Movable, type Placed } from './bench-model';
+import type { HeldSpan } from './held-spans';
 import {
   fewestMoves,
   idOf,
@@ -80,12 +81,17 @@ export const pushed = ({ movables, origin }: BenchModel, present: Placements): M
 function problemOf(model: BenchModel): BenchProblem {
   const { origin, movables, taken, ground } = model;
   // Whole minutes, rounded to the safe side: nobody clips on at 11:58:38.
-  const seconds = ({ from, to }: Stretch) => ({ fromS: minuteUp(from - origin), toS: minuteDown(to - origin) });
-  const wide = ({ from, to }: Stretch) => ({ fromS: minuteDown(from - origin), toS: minuteUp(to - origin) });
-  const isSome = ({ fromS, toS }: { fromS: number; toS: number }): boolean => toS > fromS;
+  const within = ({ from, to }: Stretch) => ({ fromS: minuteUp(from - origin), toS: minuteDown(to - origin) });
+  const around = ({ channelId, from, to }: HeldSpan): HeldSpan => ({
+    channelId,
+    from: minuteDown(from - origin),
+    to: minuteUp(to - origin),
+  });
   const ids = ground.channels.map(({ id }) => id);
   return {
-    taken: ids.map((channelId) => united(taken.filter((one) => one.channelId === channelId)).map(wide)),
+    taken: ids.map((channelId) =>
+      united(onChannels(taken.map(around), [channelId])).map(({ from, to }) => ({ fromS: from, toS: to })),
+    ),
     jobs: movables.map((movable) => ({
       id: idOf(movable),
       dueS: movable.dueAt === null ? null : (movable.dueAt - origin) / 1000,
@@ -95,7 +101,9 @@ function problemOf(model: BenchModel): BenchProblem {
         busyS: minuteUp(alternative.busyS * 1000),
         readyS: alternative.totalS.p50,
         guardS: alternative.totalS.p90,
-        mayStart: mayBegin(model, movable.file, alternative.busyS * 1000).map(seconds),
+        mayStart: mayBegin(model, movable.file, alternative.busyS * 1000)
+          .map(within)
+          .filter(({ fromS, toS }) => toS > fromS),
       })),
     })),
   };

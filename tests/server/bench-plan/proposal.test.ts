@@ -124,7 +124,8 @@ describe('a proposal where the bench has changed', () => {
     bench = await makeBench({ channels: [{ name: 'A1' }, { name: 'B1' }] });
     await onlyTwoWork(bench);
     const late = await running(bench, { spareId: await bench.spare('S-1'), repairRef: 'R-1' });
-    // Due at 16:00: on A1 from 12:00 it is ready about 15:03.
+    await running(bench, { spareId: await bench.spare('S-3'), repairRef: 'R-3' }, { channel: 'B1' });
+    // Both channels are free about 11:58; on either it is ready about 15:08.
     const wish = { spareId: await bench.spare('S-2'), repairRef: 'R-2', readyBy: clock('15:45') };
     const waiting = await queued(bench, wish, 'A1', clock('12:05'));
     expect(await proposalOf(bench)).toBeNull();

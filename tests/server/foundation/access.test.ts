@@ -113,6 +113,11 @@ describe('the routes', () => {
       'POST /api/repairs/:id/photos',
       'POST /api/repairs/:id/readings',
       'POST /api/repairs/:id/second-source',
+      'POST /api/work',
+      'POST /api/work/:id/stints/:stintId/begin',
+      'POST /api/work/:id/stints/:stintId/done',
+      'POST /api/work/:id/stints/:stintId/give-back',
+      'POST /api/work/:id/take',
     ]);
   });
 });
