@@ -46,7 +46,7 @@ export function ProposalPart({
           A better plan
         </Txt>
         <Txt kind="small" tone="ink2">
-          {proposal.proved ? 'nothing is better' : 'the best found in its time'}
+          {proposal.proved ? 'the best there is' : 'the best found so far'}
         </Txt>
       </View>
       <Txt>{proposal.because}</Txt>
