@@ -53,8 +53,8 @@ export function PlanBody({
   useEffect(() => {
     // Picked in the lanes, its places stand at the head of the side column: seen without scrolling there.
     const element = side.current as unknown as Partial<HTMLElement> | null;
-    if (picked !== null) element?.scrollIntoView?.({ block: 'nearest' });
-  }, [picked]);
+    if (picked !== null && size === 'wide') element?.scrollIntoView?.({ block: 'nearest' });
+  }, [picked, size]);
   const sideProps = { plan, now, offline: old, acts, move, person, onPerson: setPerson, onGo };
   const free = (personId: string) => {
     setPerson(personId);

@@ -74,7 +74,7 @@ export function ChannelLane({
             >
               {latenessWords(place.soonest.lateByMinutes)}
             </Txt>
-          ) : (
+          ) : place ? null : (
             <Txt kind="small" tone="ink2">
               {channel.kind}
             </Txt>
@@ -161,7 +161,7 @@ function LaneRow({
         const { id } = piece.charge.card;
         return label ? (
           <LaneCharge
-            key={id}
+            key={`${id}-${index}`}
             piece={piece}
             dots={queueDots(row, index, axis.from)}
             channelName={channel.name}

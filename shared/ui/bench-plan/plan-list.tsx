@@ -97,9 +97,9 @@ function ChannelPart({
         </Txt>
       ) : (
         <View role="list" aria-label={`Charges on ${channel.name}`}>
-          {pieces.map((piece) => (
+          {pieces.map((piece, index) => (
             <PieceRow
-              key={piece.charge.card.id}
+              key={`${piece.charge.card.id}-${index}`}
               {...{ plan, axis, piece, at, stale }}
               channelName={channel.name}
               picked={picked === piece.charge.card.id}
