@@ -53,10 +53,20 @@ export default function More() {
 function Places() {
   const router = useRouter();
   const go = (href: string) => () => router.navigate(href as Href);
+  const plansBench = useCan('bench:plan');
   const seesWaits = useCan('waits:read');
   const approves = useCan('wall:approve');
   return (
     <MoreGroup title="Workshop">
+      {plansBench ? (
+        <MoreRow
+          icon="plan"
+          title="Bench plan"
+          meaning="Channels and people on one time line"
+          href="/bench-plan"
+          onPress={go('/bench-plan')}
+        />
+      ) : null}
       <MoreRow
         icon="workshop"
         title="Workshop"
