@@ -149,7 +149,7 @@ describe('the labels of a lane', () => {
 
   it('go right of a look-in that stands over their begin', () => {
     const { labels, hidden } = placeLabels([{ x: 100, title: 'R-2411', tag: null }], [110], 872);
-    expect(labels[0]!.x).toBe(120);
+    expect(labels[0]!.x).toBe(122);
     expect(hidden).toEqual([]);
   });
 

@@ -31,6 +31,12 @@ describe('a charge that is moved', () => {
     expect(earlier.clipOn).toBe(at('14:00'));
   });
 
+  it('that stands where it cannot begin any more goes later to the soonest, and not earlier', () => {
+    const missed = { channelId: 'a1', clipOn: at('13:30') };
+    expect(stepTime(missed, places, 1).clipOn).toBe(at('14:00'));
+    expect(stepTime(missed, places, -1)).toBe(missed);
+  });
+
   it('comes back to full quarters from a time between them', () => {
     expect(stepTime({ channelId: 'a1', clipOn: at('14:52') }, places, 1).clipOn).toBe(at('15:00'));
     expect(stepTime({ channelId: 'a1', clipOn: at('14:52') }, places, -1).clipOn).toBe(at('14:45'));
