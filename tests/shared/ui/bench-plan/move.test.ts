@@ -12,7 +12,8 @@ import {
   stepTime,
   subjectOf,
 } from '@/shared/ui/bench-plan/move-candidate';
-import { at, charges, iso, places, plan } from '../../../app/bench-plan/plan-of';
+import { places } from '../../../app/bench-plan/answers-of';
+import { at, charges, iso, plan } from '../../../app/bench-plan/plan-of';
 
 const r2421 = charges.find(({ card }) => card.title === 'R-2421')!;
 const stands = standsAt(r2421)!;
