@@ -61,5 +61,6 @@ const useStyles = makeStyles(() => ({
     rowGap: 8,
     flexWrap: 'wrap',
   },
-  walk: { flexDirection: 'row', alignItems: 'center' },
+  // The arrow, not its target, stands at the edge of the column.
+  walk: { flexDirection: 'row', alignItems: 'center', marginLeft: -14 },
 }));

@@ -5,7 +5,7 @@ const boldLetter = 7.5;
 const letter = 7;
 const wordGap = 8;
 /** A look-in's head with its air to both sides, px. */
-const pegRoom = 10;
+const pegRoom = 12;
 
 export interface LabelInput {
   /** Left end of its silhouette, px; may lie left of the lane. */
