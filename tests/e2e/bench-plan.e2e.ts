@@ -6,7 +6,6 @@ import type { BenchPlanDto, MovePlacesDto } from '@/shared/contract/bench-plan';
 import { describeInBrowser, type Visitor } from '../support/browser';
 import {
   button,
-  field,
   heading,
   judge,
   member,
@@ -137,7 +136,7 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
       foreman.problems.length = 0;
       await move.click();
       await panel.getByRole('alert').waitFor();
-      expect(await panel.getByRole('alert').innerText()).toMatch(/plan beside shows what is there now/);
+      expect(await panel.getByRole('alert').innerText()).toMatch(/The plan shows what is there now/);
       await page.unroute('**/api/bench-plan/move');
       // The browser's own line about the 412 is expected; nothing else is.
       expect(foreman.problems.filter((line) => !/status of 412/.test(line))).toEqual([]);
