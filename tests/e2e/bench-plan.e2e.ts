@@ -4,17 +4,7 @@ import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import type { BenchPlanDto, MovePlacesDto } from '@/shared/contract/bench-plan';
 import { describeInBrowser, type Visitor } from '../support/browser';
-import {
-  button,
-  heading,
-  judge,
-  member,
-  openHouse,
-  patience,
-  words,
-  type House,
-  type ScreenSize,
-} from './house';
+import { button, heading, judge, member, openHouse, patience, words, type House, type ScreenSize } from './house';
 
 /** The charge of the demo that waits in the queue. */
 const queued = 'R-2418';
