@@ -46,7 +46,7 @@ export function ProposalPart({
           A better plan
         </Txt>
         <Txt kind="small" tone="ink2">
-          {proposal.proved ? 'the best there is' : 'the best found so far'}
+          {proposal.proved ? 'the best there is' : 'the best found in time'}
         </Txt>
       </View>
       <Txt>{proposal.because}</Txt>

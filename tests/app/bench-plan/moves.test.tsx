@@ -93,6 +93,18 @@ describe('moving a charge', () => {
     );
   });
 
+  it('refused because somebody changed the charge says that the plan shows what is there now', async () => {
+    open();
+    server.answers['POST /api/bench-plan/move'] = () => problem(412, 'Ines moved R-2421 at 13:41.');
+    fireEvent.click(await charge());
+    const panel = await part('Move R-2421');
+    fireEvent.click(await panel.findByRole('radio', { name: /C1/ }));
+    fireEvent.click(panel.getByRole('button', { name: 'Move R-2421 to C1 at 13:45' }));
+    expect(
+      await panel.findByText('Ines moved R-2421 at 13:41. The plan shows what is there now: look again, then decide.'),
+    ).toBeTruthy();
+  });
+
   it('of one that has begun says why it stays', async () => {
     open();
     fireEvent.click(await screen.findByRole('button', { name: /^R-2411 on A2/ }));

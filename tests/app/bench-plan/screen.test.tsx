@@ -1,7 +1,8 @@
-import { fireEvent, screen, waitFor, within } from '@testing-library/react';
+import { act, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
-import { emptyDevice, press, problem } from '../charges/bench-of';
+import { connected, lost } from '@/shared/client/link';
+import { emptyDevice, press, problem, reasonOf } from '../charges/bench-of';
 import { open, part, server, writes } from './open-plan';
 import { iso, now, people, plan } from './plan-of';
 
@@ -152,6 +153,28 @@ describe('the side column', () => {
 });
 
 describe('other states of the bench plan', () => {
+  it('without a connection keeps the plan, and says of every act that it needs the connection', async () => {
+    open();
+    const give = await press('Give Charge port flap, R-2419 to Marek');
+    try {
+      act(() => lost());
+      vi.setSystemTime(now + 6000);
+      act(() => lost());
+      await waitFor(() => expect(give.getAttribute('aria-disabled')).toBe('true'));
+      for (const [button, why] of [
+        [give, 'Giving work needs the connection.'],
+        [await press('Take this plan'), 'Taking it needs the connection.'],
+        [await press(/^Undo: R-2418/), 'Taking it back needs the connection.'],
+      ] as const)
+        expect(reasonOf(button)).toBe(why);
+      fireEvent.click(give);
+      expect(server.writes()).toEqual([]);
+      expect(screen.getByRole('list', { name: 'Charges on B1' })).toBeTruthy();
+    } finally {
+      act(() => connected());
+    }
+  });
+
   it('is a list by channel and person on a phone, with the same moves in a sheet', async () => {
     open('foreman', 390);
     fireEvent.click(

@@ -157,6 +157,12 @@ describe('the labels of a lane', () => {
     expect(hidden).toEqual([]);
   });
 
+  it('stay at their silhouettes where look-ins stand too close together: the one in the way is left out', () => {
+    // Hours of 57 px, as on a tablet: 33 px between two look-ins, and a name of 45.
+    const { labels, hidden } = placeLabels([{ x: 100, title: 'R-2411', tag: null }], [112, 169, 226], 600);
+    expect([labels[0]!.x, hidden]).toEqual([100, [112]]);
+  });
+
   it('of 300 random lanes never stand over each other, over a look-in that is drawn, or beyond the lane', () => {
     let seed = 11;
     const random = (below: number) => {
