@@ -58,6 +58,14 @@ function Places() {
   const approves = useCan('wall:approve');
   return (
     <MoreGroup title="Workshop">
+      <MoreRow
+        icon="day"
+        title="My day"
+        meaning="Your hands, look-ins and fills in their order"
+        href="/my-day"
+        onPress={go('/my-day')}
+      />
+      <MoreRow icon="work" title="Other work" meaning="Pieces that fill a wait" href="/work" onPress={go('/work')} />
       {plansBench ? (
         <MoreRow
           icon="plan"

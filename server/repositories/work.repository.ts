@@ -13,16 +13,20 @@ export const listOpenWork = (manager: EntityManager, workshopId: string): Promis
   manager.find(Work, { where: { workshopId, overAt: IsNull() }, order: { createdAt: 'ASC', id: 'ASC' } });
 
 /** One page of the work that is done or dropped, the last to end first. */
-export const listOverWork = (manager: EntityManager, workshopId: string, skip: number, take: number): Promise<Work[]> =>
+export const listOverWork = (
+  manager: EntityManager,
+  workshopId: string,
+  { repairId, skip, take }: { repairId?: string; skip: number; take: number },
+): Promise<Work[]> =>
   manager.find(Work, {
-    where: { workshopId, overAt: Not(IsNull()) },
+    where: { workshopId, overAt: Not(IsNull()), ...(repairId === undefined ? {} : { repairId }) },
     order: { overAt: 'DESC', id: 'ASC' },
     skip,
     take,
   });
 
-export const countOverWork = (manager: EntityManager, workshopId: string): Promise<number> =>
-  manager.countBy(Work, { workshopId, overAt: Not(IsNull()) });
+export const countOverWork = (manager: EntityManager, workshopId: string, repairId?: string): Promise<number> =>
+  manager.countBy(Work, { workshopId, overAt: Not(IsNull()), ...(repairId === undefined ? {} : { repairId }) });
 
 /** Open work that names a skill, a place or a repair. */
 export const listOpenWorkOf = (

@@ -7,7 +7,14 @@ import { invalid } from '../errors/domain-error';
 import { findPlace } from '../repositories/places.repository';
 import { findRepair } from '../repositories/repairs.repository';
 import { findSkill } from '../repositories/skills.repository';
-import { countOverWork, insertWork, listOpenWork, listOverWork, workNumbers } from '../repositories/work.repository';
+import {
+  countOverWork,
+  insertWork,
+  listOpenWork,
+  listOpenWorkOf,
+  listOverWork,
+  workNumbers,
+} from '../repositories/work.repository';
 import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
 import { announceBench } from './announce';
 import { clockText } from './charge-words';
@@ -25,18 +32,26 @@ const LONG_OF_LIKELY = 1.5;
 
 /**
  * One page of the work that is not over, what is worth most and due first at the top, or of that which is, the last to end
- * first.
+ * first. With a repair only what is for that one, also in the counts.
  */
 export async function workList(deps: Deps, member: Member, query: WorkQuery): Promise<WorkListDto> {
   const { manager } = deps.dataSource;
   const { workshopId } = member;
   const page = Number(query.page ?? 1);
+  const { repairId } = query;
   // Counts are of all that is open, so it is read whatever is shown: a workshop has some dozens at most.
-  const open = await loadWorkFiles(manager, workshopId, (await listOpenWork(manager, workshopId)).sort(byWorth));
+  const standing = await (repairId === undefined
+    ? listOpenWork(manager, workshopId)
+    : listOpenWorkOf(manager, workshopId, { repairId }));
+  const open = await loadWorkFiles(manager, workshopId, standing.sort(byWorth));
   const from = (page - 1) * PAGE_SIZE;
   const found =
     query.state === 'over'
-      ? await loadWorkFiles(manager, workshopId, await listOverWork(manager, workshopId, from, PAGE_SIZE + 1))
+      ? await loadWorkFiles(
+          manager,
+          workshopId,
+          await listOverWork(manager, workshopId, { repairId, skip: from, take: PAGE_SIZE + 1 }),
+        )
       : open.slice(from, from + PAGE_SIZE + 1);
   const counted = (state: 'open' | 'taken' | 'begun') => open.filter((file) => workState(file) === state).length;
   return {
@@ -45,7 +60,7 @@ export async function workList(deps: Deps, member: Member, query: WorkQuery): Pr
       open: counted('open'),
       taken: counted('taken'),
       begun: counted('begun'),
-      over: await countOverWork(manager, workshopId),
+      over: await countOverWork(manager, workshopId, repairId),
     },
     nextPage: found.length > PAGE_SIZE ? page + 1 : null,
   };

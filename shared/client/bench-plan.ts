@@ -52,8 +52,11 @@ export const fitsQuery = () =>
     queryFn: ({ signal }) => api.get<FitsDto>('/bench-plan/fits', { signal }),
     staleTime: staleTimes.running,
   });
+/** A running stretch grows shorter with the clock, and what fits it with it. */
+const fitsRenewMs = 60_000;
+
 /** The work that fits the waits: of everybody for those who plan the bench, of oneself for others. */
-export const useFits = () => useQuery(fitsQuery());
+export const useFits = (enabled = true) => useQuery({ ...fitsQuery(), enabled, refetchInterval: fitsRenewMs });
 
 export const myDayQuery = (day: string | null = null) =>
   queryOptions({

@@ -16,7 +16,7 @@ export function useWorkActs(onRefused: () => void = () => {}) {
   const giveBack = useGiveBack();
   const drop = useDropWork();
   const reopen = useReopenWork();
-  const [refused, setRefused] = useState<{ workId: string; text: string } | null>(null);
+  const [refused, setRefused] = useState<{ workId: string; text: string; error: Error } | null>(null);
   const writes = [take, begin, end, giveBack, drop, reopen];
   const running = writes.find(({ isPending }) => isPending);
   const outcome = (workId: string, done?: (work: WorkDto) => void) => ({
@@ -25,7 +25,7 @@ export function useWorkActs(onRefused: () => void = () => {}) {
       done?.(work);
     },
     onError: (error: Error) => {
-      setRefused({ workId, text: workProblem(error) });
+      setRefused({ workId, text: workProblem(error), error });
       onRefused();
     },
   });
@@ -52,6 +52,6 @@ export function useWorkActs(onRefused: () => void = () => {}) {
 }
 export type WorkActs = ReturnType<typeof useWorkActs>;
 
-/** The stint somebody has just been given: of the person's, the one that was made last. */
-export const takenStint = (work: WorkDto, personId: string): StintDto | null =>
-  work.stints.filter(({ person, state }) => person.id === personId && state === 'taken').at(-1) ?? null;
+/** The stint that an act has made: the one that was not there before. */
+export const newStint = (before: Pick<WorkDto, 'stints'>, after: Pick<WorkDto, 'stints'>): StintDto | null =>
+  after.stints.find(({ id }) => !before.stints.some((known) => known.id === id)) ?? null;

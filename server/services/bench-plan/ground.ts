@@ -55,7 +55,12 @@ export async function loadGround(
   const until = Math.max(days.to, now + HORIZON_MS);
   const files = await loadFiles(manager, workshopId, await listChargesSince(manager, workshopId, since), bench);
   const waits = await listWaitsSince(manager, workshopId, since);
-  const named = [...files.map(({ charge }) => charge.repairId), ...waits.map(({ repairId }) => repairId)];
+  const staff = await groundPeople(manager, bench, { from: since, to: until });
+  const named = [
+    ...files.map(({ charge }) => charge.repairId),
+    ...waits.map(({ repairId }) => repairId),
+    ...[...staff.work.values()].map(({ repairId }) => repairId),
+  ];
   const rows = await repairsById(manager, workshopId, [...new Set(named.filter((id) => id !== null))]);
   const onRepairs = await peopleOfRepairs(manager, workshopId, [...rows.keys()]);
   const able = (id: string): boolean => bench.people.get(id)?.disabledAt === null;
@@ -68,7 +73,7 @@ export async function loadGround(
   return {
     ...{ workshopId, now, days, workshop, files, repairs, waits },
     channels: (await listUsableChannels(manager, workshopId)).map(({ channel }) => channel),
-    ...(await groundPeople(manager, bench, { from: since, to: until })),
+    ...staff,
   };
 }
 

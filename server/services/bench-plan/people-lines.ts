@@ -126,11 +126,12 @@ const handDto = ({ from, to, kind, title, chargeId, repairId, place }: HandBlock
   to: toInstant(to),
 });
 
-function fillDto({ work, places }: BenchGround, stint: WorkStint, { from, to }: Stretch): PlanBlockDto {
+function fillDto({ work, places, repairs }: BenchGround, stint: WorkStint, { from, to }: Stretch): PlanBlockDto {
   const piece = work.get(stint.workId);
+  const number = repairs.get(piece?.repairId ?? '')?.repair.number;
   return {
     kind: 'fill',
-    title: piece?.title ?? 'Other work',
+    title: [piece?.title ?? 'Other work', number].filter(Boolean).join(' '),
     chargeId: stint.waitChargeId,
     repairId: piece?.repairId ?? null,
     workId: stint.workId,

@@ -1,6 +1,7 @@
 import { lazy, Suspense, useEffect, useMemo, useRef, useState } from 'react';
 import { View } from 'react-native';
 import type { BenchPlanDto } from '@/shared/contract/bench-plan';
+import { fitsPartId } from '@/shared/ui/bench-plan/fits-part';
 import { PlanList } from '@/shared/ui/bench-plan/plan-list';
 import { PlanPicture } from '@/shared/ui/bench-plan/plan-picture';
 import { StatusRegion } from '@/shared/ui/primitives/live-region';
@@ -52,12 +53,12 @@ export function PlanBody({
   useEffect(() => {
     // Picked in the lanes, its places stand at the head of the side column: seen without scrolling there.
     const element = side.current as unknown as Partial<HTMLElement> | null;
-    if (picked !== null) element?.scrollIntoView?.({ block: 'nearest' });
-  }, [picked]);
+    if (picked !== null && size === 'wide') element?.scrollIntoView?.({ block: 'nearest' });
+  }, [picked, size]);
   const sideProps = { plan, now, offline: old, acts, move, person, onPerson: setPerson, onGo };
   const free = (personId: string) => {
     setPerson(personId);
-    (side.current as unknown as Partial<HTMLElement> | null)?.scrollIntoView?.({ block: 'nearest' });
+    document.getElementById(fitsPartId)?.scrollIntoView?.({ block: 'nearest' });
   };
   const nothing =
     plan.charges.length === 0 ? (

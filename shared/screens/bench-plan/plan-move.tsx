@@ -2,11 +2,11 @@ import { lazy, Suspense } from 'react';
 import { View } from 'react-native';
 import { useFormats } from '@/shared/ui/format/formats';
 import { placeWords } from '@/shared/ui/bench-plan/charge-words';
-import { BottomSheet } from '@/shared/ui/primitives/bottom-sheet';
 import { makeStyles } from '@/shared/ui/theme/make-styles';
 import type { Move } from './use-move';
 
 const MovePanel = lazy(() => import('@/shared/ui/bench-plan/move-panel').then((part) => ({ default: part.MovePanel })));
+const MoveSheet = lazy(() => import('@/shared/ui/bench-plan/move-panel').then((part) => ({ default: part.MoveSheet })));
 
 /** The picked charge with its places: in the side column of the desk, in a sheet elsewhere. */
 export function PlanMove({
@@ -28,9 +28,10 @@ export function PlanMove({
   const formats = useFormats();
   const { subject } = move;
   if (!subject) return null;
+  const Panel = sheet ? MoveSheet : MovePanel;
   const panel = (
-    <Suspense fallback={<View style={styles.coming} />}>
-      <MovePanel
+    <Suspense fallback={<View style={!sheet && styles.coming} />}>
+      <Panel
         title={subject.title}
         chargeId={subject.chargeId}
         stands={subject.channelNames.length === 0 ? null : placeWords(subject, now, formats)}
@@ -59,16 +60,7 @@ export function PlanMove({
       />
     </Suspense>
   );
-  if (!sheet) return <View style={styles.panel}>{panel}</View>;
-  return (
-    <BottomSheet
-      open
-      title={subject.fixedBecause === null ? `Move ${subject.title}` : subject.title}
-      onClose={move.leave}
-    >
-      {panel}
-    </BottomSheet>
-  );
+  return sheet ? panel : <View style={styles.panel}>{panel}</View>;
 }
 
 const useStyles = makeStyles(({ colors }) => ({

@@ -6,13 +6,14 @@ import { useFormats } from '../format/formats';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import type { WebKeyEvent } from '../theme/web-props';
-import { chargeTag, latenessWords, placeWords } from './charge-words';
+import { chargeTag, latenessWords } from './charge-words';
 import { LaneCharge, rowHeight } from './lane-charge';
 import { labelWidth, placeLabels } from './lane-labels';
 import { lanePieces, packRows, queueDots, type LanePiece } from './lane-pieces';
 import type { Ghost } from './move-candidate';
 import { MoveGhost } from './move-ghost';
-import { toX, type PlanAxis } from './plan-axis';
+import { NowLine } from './now-line';
+import { nowX, toX, type PlanAxis } from './plan-axis';
 import type { LaneDrag } from './use-lane-drag';
 import { moment } from '../format/clock';
 
@@ -57,6 +58,7 @@ export function ChannelLane({
     return packRows(pieces, (piece) => extentOf(piece, axis));
   }, [plan, channel.id, at, axis]);
   const height = Math.max(1, rows.length) * rowHeight;
+  const line = nowX(axis, at.now);
   return (
     <View ref={ref} style={styles.lane}>
       <View style={[styles.name, { width: nameWidth }]}>
@@ -64,9 +66,19 @@ export function ChannelLane({
           <Txt kind="numM" heading={3}>
             {channel.name}
           </Txt>
-          <Txt kind="small" tone="ink2">
-            {channel.kind}
-          </Txt>
+          {place?.soonest ? (
+            <Txt
+              kind="small"
+              bold={place.soonest.lateByMinutes > 0}
+              tone={place.soonest.lateByMinutes > 0 ? 'alarm' : 'ink2'}
+            >
+              {latenessWords(place.soonest.lateByMinutes)}
+            </Txt>
+          ) : place ? null : (
+            <Txt kind="small" tone="ink2">
+              {channel.kind}
+            </Txt>
+          )}
         </View>
         {place ? <PlaceNote place={place} now={at.now} /> : null}
       </View>
@@ -75,12 +87,13 @@ export function ChannelLane({
         aria-label={rows.length > 0 ? `Charges on ${channel.name}` : undefined}
         style={[styles.room, { width: axis.width, height }]}
       >
+        <NowLine x={line} stale={stale} />
         {rows.map((row, index) => (
           <LaneRow
             key={row[0]?.charge.card.id ?? index}
             row={row}
             top={index * rowHeight}
-            {...{ plan, channel, axis, at, acts, stale, formats }}
+            {...{ plan, channel, axis, at, acts, stale, formats, line }}
           />
         ))}
         {ghost ? <MoveGhost ghost={ghost} axis={axis} /> : null}
@@ -106,6 +119,7 @@ function LaneRow({
   acts,
   stale,
   formats,
+  line,
 }: {
   row: readonly LanePiece[];
   top: number;
@@ -116,6 +130,7 @@ function LaneRow({
   acts: LaneActs;
   stale: boolean;
   formats: ReturnType<typeof useFormats>;
+  line: number | null;
 }) {
   const styles = useStyles();
   const spanS = (axis.to - axis.from) / 1000;
@@ -140,12 +155,13 @@ function LaneRow({
   );
   return (
     <View style={[styles.row, { top, width: axis.width }]}>
+      <NowLine x={line} stale={stale} />
       {row.map((piece, index) => {
         const label = labels[index];
         const { id } = piece.charge.card;
         return label ? (
           <LaneCharge
-            key={id}
+            key={`${id}-${index}`}
             piece={piece}
             dots={queueDots(row, index, axis.from)}
             channelName={channel.name}
@@ -176,21 +192,18 @@ function PlaceNote({ place, now }: { place: MovePlaceDto; now: number }) {
         {place.because ?? 'No place here.'}
       </Txt>
     );
-  const from = placeWords({ channelNames: [], clipOnAt: soonest.clipOnAt }, now, formats).replace(/^ at /, 'from ');
-  const ready = moment(Date.parse(soonest.ready.likely), formats.zone, now, formats.marks);
+  const at = (instant: string) => moment(Date.parse(instant), formats.zone, now, formats.marks);
   return (
     <>
-      <Txt kind="small" numberOfLines={1}>{`${from}, ready ${ready}`}</Txt>
-      <Txt kind="small" tone={soonest.lateByMinutes > 0 ? 'alarm' : 'ink2'} numberOfLines={1}>
-        {latenessWords(soonest.lateByMinutes)}
-      </Txt>
+      <Txt kind="small" numberOfLines={1}>{`from ${at(soonest.clipOnAt)}`}</Txt>
+      <Txt kind="small" tone="ink2" numberOfLines={1}>{`ready ${at(soonest.ready.likely)}`}</Txt>
     </>
   );
 }
 
 const useStyles = makeStyles(({ colors }) => ({
   lane: { flexDirection: 'row', alignItems: 'center', borderTopWidth: 1, borderTopColor: colors.line },
-  name: { flexShrink: 0, paddingRight: 8 },
+  name: { flexShrink: 0 },
   names: { flexDirection: 'row', alignItems: 'baseline', flexWrap: 'wrap', columnGap: 5 },
   // What runs beyond the day is cut at the ends of the axis.
   room: { overflow: 'hidden' },

@@ -1,10 +1,7 @@
 import { View } from 'react-native';
-import { dayName } from '../format/clock';
-import { addDays } from '../format/zone';
-import { Button } from '../primitives/button';
-import { IconButton } from '../primitives/icon-button';
 import { SegmentSwitch } from '../primitives/segment-switch';
 import { makeStyles } from '../theme/make-styles';
+import { DayWalk } from './day-walk';
 
 /** Which days are shown: one or seven, and the ones before and after. */
 export function DayBar({
@@ -20,24 +17,9 @@ export function DayBar({
   onChange: (day: string, days: 1 | 7) => void;
 }) {
   const styles = useStyles();
-  const word = days === 1 ? 'day' : 'week';
-  const before = addDays(day, -days);
-  const after = addDays(day, days);
   return (
     <View style={styles.bar}>
-      <View style={styles.walk}>
-        <IconButton
-          icon="back"
-          label={`The ${word} before, ${dayName(before, today)}`}
-          onPress={() => onChange(before, days)}
-        />
-        <Button look="line" size="small" title="Today" disabled={day === today} onPress={() => onChange(today, days)} />
-        <IconButton
-          icon="right"
-          label={`The ${word} after, ${dayName(after, today)}`}
-          onPress={() => onChange(after, days)}
-        />
-      </View>
+      <DayWalk day={day} days={days} today={today} onGo={(next) => onChange(next, days)} />
       <SegmentSwitch
         label="Days shown"
         fit="words"
@@ -61,5 +43,4 @@ const useStyles = makeStyles(() => ({
     rowGap: 8,
     flexWrap: 'wrap',
   },
-  walk: { flexDirection: 'row', alignItems: 'center' },
 }));

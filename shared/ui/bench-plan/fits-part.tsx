@@ -13,6 +13,9 @@ import { SideSection } from './side-section';
 /** Shown at most, of each: those that fit, and those that just do not. */
 const most = { fitting: 6, beside: 4 } as const;
 
+/** Where a free stretch that was pressed leads to. */
+export const fitsPartId = 'bench-fits';
+
 type Stretch = PersonFitsDto['stretches'][number];
 
 /** The stretch that is spoken of: the first in which something fits, else the first. */
@@ -96,13 +99,13 @@ export function FitsPart({
   const fitting = stretch.fits.filter((fit) => fit.span !== null).slice(0, most.fitting);
   const beside = stretch.fits.filter((fit) => fit.span === null).slice(0, most.beside);
   return (
-    <SideSection title={`Fits ${name}, ${stretch.minutes}${NBSP}min at ${at}`}>
+    <SideSection id={fitsPartId} title={`Fits ${name}, ${stretch.minutes}${NBSP}min at ${at}`}>
       {fitting.length === 0 ? (
         <Txt kind="small" tone="ink2">
           Nothing that is open fits this stretch.
         </Txt>
       ) : null}
-      <View role="list" aria-label={`Work that fits ${name}`}>
+      <View role="list" aria-label={`Work that fits ${name}`} style={styles.list}>
         {fitting.map((fit) => (
           <View key={fit.work.id} role="listitem" style={styles.row}>
             <View style={styles.words}>
@@ -164,8 +167,8 @@ const useStyles = makeStyles(({ colors }) => ({
     borderTopWidth: 1,
     borderTopColor: colors.line,
     paddingVertical: 8,
-    marginTop: 0,
   },
+  list: { marginTop: 8 },
   words: { flex: 1, minWidth: 0, rowGap: 1 },
   title: { fontSize: 15, lineHeight: 20 },
 }));

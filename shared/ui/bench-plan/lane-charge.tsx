@@ -56,7 +56,8 @@ export function LaneCharge({
   const styles = useStyles();
   const formats = useFormats();
   const { ribbon, charge } = piece;
-  const left = Math.max(0, Math.min(axis.width - touch.min, toX(axis, piece.from)));
+  // A little air, so that its frame does not stand on its name.
+  const left = Math.max(0, Math.min(axis.width - touch.min, toX(axis, piece.from) - 5));
   const right = Math.max(left + touch.min, label.x + label.width, Math.min(axis.width, toX(axis, piece.to)));
   const movable = charge.fixedBecause === null;
   const pointer = movable
@@ -132,7 +133,7 @@ export function LookInHead({
   const { colors } = useTheme();
   const ink = missed ? colors.alarm : colors.ink;
   return (
-    <View style={{ position: 'absolute', left: x - 7, top, pointerEvents: 'none' }} aria-hidden>
+    <View style={{ position: 'absolute', left: x - 7, top, pointerEvents: 'none', zIndex: 2 }} aria-hidden>
       <Svg width={14} height={16} viewBox="0 0 14 16" fill="none">
         {stem ? <Path d="M7 7V15" stroke={ink} strokeWidth={2} /> : null}
         <Circle
@@ -149,7 +150,8 @@ export function LookInHead({
 }
 
 const useStyles = makeStyles((theme) => ({
-  item: { position: 'static' },
+  // Of no layer of its own: the line of now passes between its silhouette and its name.
+  item: { position: 'static', zIndex: 'auto' as unknown as number },
   ribbon: { position: 'absolute', left: 0, top: silhouette.top, pointerEvents: 'none' },
   dim: { opacity: 0.5 },
   label: {
@@ -158,8 +160,11 @@ const useStyles = makeStyles((theme) => ({
     flexDirection: 'row',
     columnGap: 8,
     pointerEvents: 'none',
+    // Before the line of now, and cut free from it.
+    zIndex: 2,
+    backgroundColor: theme.colors.ground,
   },
-  target: { position: 'absolute', top: 2, height: rowHeight - 4, borderRadius: radius.dock },
+  target: { position: 'absolute', top: 2, height: rowHeight - 4, borderRadius: radius.dock, zIndex: 3 },
   movable: { cursor: 'grab' } as object,
   picked: innerFrame(theme, stroke.chosen, theme.colors.ink),
 }));

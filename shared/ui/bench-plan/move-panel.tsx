@@ -2,12 +2,14 @@ import { View } from 'react-native';
 import type { MovePlaceDto, MovePlacesDto, PlacedDto } from '@/shared/contract/bench-plan';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
+import { BottomSheet } from '../primitives/bottom-sheet';
 import { Button } from '../primitives/button';
 import { ChoiceList } from '../primitives/choice-row';
 import { DateTimeField, type DayAndTime } from '../primitives/date-time-field';
 import { Link } from '../primitives/link';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
+import { web } from '../theme/web-props';
 import { latenessWords, placeWords, readyWords, type Wording } from './charge-words';
 import type { Candidate } from './move-candidate';
 
@@ -43,6 +45,8 @@ export interface MovePanelProps {
   onMove: () => void;
   onLeave: () => void;
   onGo: (path: string) => void;
+  /** false where its name stands over it already. */
+  titled?: boolean;
 }
 
 /** 'from 14:45, ready 17:25 (17:10–17:55), on time'; or why it cannot be done there. */
@@ -53,85 +57,63 @@ export function placeMeaning({ soonest, because }: MovePlaceDto, now: number, wo
   return `from ${from}, ${ready}, ${latenessWords(soonest.lateByMinutes)}`;
 }
 
-/** The charge that was picked: the channels that can do it, the time to clip on, and what that brings. */
-export function MovePanel(props: MovePanelProps) {
-  const { title, stands, dueAt, fixedBecause, now, onLeave, onGo, chargeId } = props;
+/** The charge that was picked: where it stands, the channels that can do it, the time to clip on, and what that brings. */
+export function MoveChoice(props: MovePanelProps) {
+  const { title, stands, dueAt, fixedBecause, now, onGo, chargeId, titled = true } = props;
   const styles = useStyles();
   const { zone, marks } = useFormats();
   const due = dueAt === null ? null : `due ${moment(Date.parse(dueAt), zone, now, marks)}`;
+  const live = `/charges/${chargeId}`;
   return (
-    <View role="region" aria-label={`Move ${title}`} style={styles.panel}>
+    <View style={styles.stack}>
       <View style={styles.head}>
-        <Txt kind="numM" heading={2}>
-          {title}
-        </Txt>
-        <Link
-          title="Open the charge"
-          href={`/charges/${chargeId}`}
-          onPress={() => onGo(`/charges/${chargeId}`)}
-          kind="small"
-        />
+        {titled ? (
+          <Txt kind="numM" heading={2}>
+            {title}
+          </Txt>
+        ) : (
+          <Txt tone="ink2">{stands ?? 'no channel yet'}</Txt>
+        )}
+        <Link title="Open the charge" href={live} onPress={() => onGo(live)} kind="small" />
       </View>
-      <Txt tone="ink2">{[stands ?? 'no channel yet', due].filter(Boolean).join(', ')}</Txt>
+      <Txt tone="ink2">{[titled ? (stands ?? 'no channel yet') : null, due].filter(Boolean).join(', ')}</Txt>
       {fixedBecause !== null ? <Txt>{fixedBecause}</Txt> : <Places {...props} />}
-      <Button
-        look="line"
-        size="small"
-        title={fixedBecause === null ? 'Leave it where it is' : 'Close'}
-        onPress={onLeave}
-      />
     </View>
   );
 }
 
 function Places({
-  title,
   places,
   placesProblem,
   candidate,
   placed,
-  other,
   taken,
   typed,
   timeError,
   today,
   now,
-  busy,
-  offline,
-  problem,
   onChannel,
   onTyped,
   onStep,
   onRetry,
-  onMove,
 }: MovePanelProps) {
   const styles = useStyles();
   const formats = useFormats();
   if (!places)
     return placesProblem ? (
-      <View style={styles.stack}>
+      <>
         <Txt tone="alarm" role="alert">
           {placesProblem}
         </Txt>
         <Button look="line" size="small" title="Try again" onPress={onRetry} />
-      </View>
+      </>
     ) : (
       <View aria-busy style={styles.looking}>
         <Txt tone="ink2">Looking for its places.</Txt>
       </View>
     );
-  const why = offline
-    ? 'Moving it needs the connection.'
-    : candidate === null
-      ? 'Choose a channel.'
-      : !placed
-        ? 'It cannot be done on that channel. Choose another one.'
-        : !other
-          ? 'It stands there now. Choose another channel or time.'
-          : null;
-  const disabled = why !== null || timeError !== null;
   return (
-    <View style={styles.stack}>
+    <>
       <ChoiceList
         label="Channel"
         outset={0}
@@ -171,7 +153,7 @@ function Places({
               grow
             />
           </View>
-          <View {...({ 'aria-live': 'polite' } as object)} style={styles.outcome}>
+          <View {...web({ 'aria-live': 'polite' })} style={styles.outcome}>
             <Txt bold>{readyWords({ ready: placed.ready, dueAt: null }, now, formats)}</Txt>
             <Txt bold={placed.lateByMinutes > 0} tone={placed.lateByMinutes > 0 ? 'alarm' : 'ink2'}>
               {latenessWords(placed.lateByMinutes)}
@@ -180,6 +162,36 @@ function Places({
           </View>
         </>
       ) : null}
+    </>
+  );
+}
+
+/** Why it cannot be moved yet; null: it can. */
+function waitsFor({ offline, candidate, placed, other }: MovePanelProps): string | null {
+  if (offline) return 'Moving it needs the connection.';
+  if (candidate === null) return 'Choose a channel.';
+  if (!placed) return 'It cannot be done on that channel. Choose another one.';
+  return other ? null : 'It stands there now. Choose another channel or time.';
+}
+
+/** The buttons under it: moved there, or left where it is; with what stands against it. */
+export function MoveActs(props: MovePanelProps) {
+  const { title, fixedBecause, places, placed, timeError, now, busy, problem, onMove, onLeave } = props;
+  const styles = useStyles();
+  const formats = useFormats();
+  const leave = (
+    <Button
+      look="line"
+      size="small"
+      title={fixedBecause === null ? 'Leave it where it is' : 'Close'}
+      onPress={onLeave}
+    />
+  );
+  if (fixedBecause !== null || !places) return leave;
+  const why = waitsFor(props);
+  const to = placed ? placeWords(placed, now, formats) : null;
+  return (
+    <View style={styles.acts}>
       {problem ? (
         <Txt bold tone="alarm" role="alert">
           {problem}
@@ -194,19 +206,42 @@ function Places({
       ) : null}
       <Button
         size="small"
-        title={placed ? `Move it to ${placeWords(placed, now, formats)}` : `Move ${title}`}
-        label={placed ? `Move ${title} to ${placeWords(placed, now, formats)}` : undefined}
+        title={to ? `Move it to ${to}` : 'Move it'}
+        label={to ? `Move ${title} to ${to}` : `Move ${title}`}
         busy={busy}
-        disabled={disabled}
+        disabled={why !== null || timeError !== null}
         describedBy={why ? 'bench-move-why' : undefined}
         onPress={onMove}
       />
+      {leave}
     </View>
   );
 }
 
+/** Both under each other: the side column of the desk. */
+export const MovePanel = (props: MovePanelProps) => {
+  const styles = useStyles();
+  return (
+    <View role="region" aria-label={`Move ${props.title}`} style={styles.stack}>
+      <MoveChoice {...props} />
+      <MoveActs {...props} />
+    </View>
+  );
+};
+
+/** In a sheet the buttons stay at its foot while the places scroll. */
+export const MoveSheet = (props: MovePanelProps) => (
+  <BottomSheet
+    open
+    title={props.fixedBecause === null ? `Move ${props.title}` : props.title}
+    onClose={props.onLeave}
+    actions={<MoveActs {...props} />}
+  >
+    <MoveChoice {...props} titled={false} />
+  </BottomSheet>
+);
+
 const useStyles = makeStyles(() => ({
-  panel: { rowGap: 8 },
   head: {
     flexDirection: 'row',
     justifyContent: 'space-between',
@@ -215,6 +250,7 @@ const useStyles = makeStyles(() => ({
     flexWrap: 'wrap',
   },
   stack: { rowGap: 10 },
+  acts: { rowGap: 8 },
   looking: { minHeight: 48, justifyContent: 'center' },
   steps: { flexDirection: 'row', columnGap: 8 },
   outcome: { rowGap: 1 },

@@ -125,7 +125,13 @@ export function LookInsCallOut({ lookIns, now }: { lookIns: readonly PlanLookInD
 }
 
 const useStyles = makeStyles(() => ({
-  head: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'center', columnGap: 12 },
+  head: {
+    flexDirection: 'row',
+    flexWrap: 'wrap',
+    justifyContent: 'space-between',
+    alignItems: 'center',
+    columnGap: 12,
+  },
   tag: { flexShrink: 1, minWidth: 0 },
   fact: { marginTop: 8, marginBottom: 10, lineHeight: 21 },
 }));

@@ -5,9 +5,10 @@ import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { radius } from '../theme/tokens';
 import { TimeAxis } from '../wait-ribbon/time-axis';
+import { NowLine } from './now-line';
 import { axisTicks, flagWidth, flagX, nowX, type PlanAxis } from './plan-axis';
 
-export const axisHeight = 26;
+const axisHeight = 26;
 
 /** The hours over the lanes, with the clock of now on its flag. Readers hear the times from the lanes. */
 export function PlanAxisHead({ axis, now, stale }: { axis: PlanAxis; now: number; stale: boolean }) {
@@ -19,6 +20,7 @@ export function PlanAxisHead({ axis, now, stale }: { axis: PlanAxis; now: number
   return (
     <View style={[styles.head, { width: axis.width }]} aria-hidden>
       <TimeAxis ticks={ticks} fromS={0} toS={spanS} width={axis.width} height={22} />
+      {shown === null ? null : <NowLine x={nowX(axis, shown)} stale={stale} />}
       {shown === null ? null : (
         <View
           style={[styles.flag, stale && styles.staleFlag, { left: flagX(axis, shown, marks), width: flagWidth(marks) }]}
@@ -42,6 +44,7 @@ const useStyles = makeStyles(({ colors }) => ({
     backgroundColor: colors.ink,
     alignItems: 'center',
     justifyContent: 'center',
+    zIndex: 2,
   },
   // The link is down: the clock goes on, what is drawn does not.
   staleFlag: { backgroundColor: colors.ground, borderWidth: 1.5, borderColor: colors.ink3 },

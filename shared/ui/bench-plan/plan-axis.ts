@@ -1,7 +1,7 @@
 /** The one time axis under all lanes of the bench plan. Instants are epoch ms, places px. */
 import type { BenchPlanDto } from '@/shared/contract/bench-plan';
 import { instantOfDay } from '../format/zone';
-import { clockTicks, type Tick } from '../wait-ribbon/ticks';
+import { clockTicks, tickAnchor, type Tick } from '../wait-ribbon/ticks';
 import type { LocaleMarks } from '../format/marks';
 
 export interface PlanAxis {
@@ -59,8 +59,11 @@ export function dayAxis(plan: BenchPlanDto, now: number): { from: number; to: nu
 /** Width of the flag with the clock of now, px: '13:42' or '12:42 pm'. */
 export const flagWidth = (marks: LocaleMarks): number => (marks.hour12 ? 78 : 50);
 
+/** px between words of the axis. */
+const wordAir = 4;
+
 /** Width of an hour's word, px. */
-const tickWordWidth = (marks: LocaleMarks): number => (marks.hour12 ? 62 : 38);
+export const tickWordWidth = (marks: LocaleMarks): number => (marks.hour12 ? 62 : 38);
 
 export interface AxisTick extends Tick {
   /** px */
@@ -69,14 +72,25 @@ export interface AxisTick extends Tick {
   quiet: boolean;
 }
 
-/** The hours of the axis, those under the flag of now without their word. */
+/** Left end of an hour's word: at the ends of the axis it is pushed inside. */
+export function tickWordX(x: number, axis: PlanAxis, marks: LocaleMarks): number {
+  const anchor = tickAnchor(x, axis.width, true);
+  return anchor === 'start' ? x : x - tickWordWidth(marks) * (anchor === 'end' ? 1 : 0.5);
+}
+
+/** The hours of the axis; those under the flag of now, or under the word before them, without their word. */
 export function axisTicks(axis: PlanAxis, zone: string, marks: LocaleMarks, now: number | null): AxisTick[] {
-  const clear = (flagWidth(marks) + tickWordWidth(marks)) / 2 + 4;
-  const nowX = now === null ? null : flagX(axis, now, marks) + flagWidth(marks) / 2;
+  const flag = now === null ? null : flagX(axis, now, marks);
   const reach = (axis.to - axis.from) / 1000;
+  let wordEnd = -Infinity;
   return clockTicks({ zeroInstant: axis.from, fromS: 0, toS: reach, width: axis.width, zone, marks }).map((tick) => {
     const x = (tick.s / reach) * axis.width;
-    return { ...tick, x, quiet: nowX !== null && Math.abs(x - nowX) < clear };
+    const left = tickWordX(x, axis, marks);
+    const right = left + tickWordWidth(marks);
+    const underFlag = flag !== null && right + wordAir > flag && left - wordAir < flag + flagWidth(marks);
+    const quiet = underFlag || left < wordEnd + wordAir;
+    if (!quiet) wordEnd = right;
+    return { ...tick, x, quiet };
   });
 }
 

@@ -12,6 +12,7 @@ import { makeStyles } from '../theme/make-styles';
 import { stroke, touch } from '../theme/tokens';
 import { web } from '../theme/web-props';
 import { chargeTag, freeWords as channelFree } from './charge-words';
+import { dayAxis } from './plan-axis';
 import { lanePieces, type LanePiece } from './lane-pieces';
 import { absence, blockWords, freeWords, personPegs } from './person-pieces';
 
@@ -32,11 +33,12 @@ export function PlanList({
   onFree: (personId: string) => void;
 }) {
   const styles = useStyles();
+  const axis = dayAxis(plan, at.now);
   return (
     <View style={styles.stack}>
       <View role="group" aria-label="Channels">
         {plan.channels.map((channel) => (
-          <ChannelPart key={channel.id} {...{ plan, channel, at, stale, picked, onPick }} />
+          <ChannelPart key={channel.id} {...{ plan, axis, channel, at, stale, picked, onPick }} />
         ))}
       </View>
       <View role="group" aria-label="People">
@@ -54,6 +56,7 @@ export function PlanList({
 
 function ChannelPart({
   plan,
+  axis,
   channel,
   at,
   stale,
@@ -61,6 +64,8 @@ function ChannelPart({
   onPick,
 }: {
   plan: BenchPlanDto;
+  /** One axis for all silhouettes of the day. */
+  axis: { from: number; to: number };
   channel: PlanChannelDto;
   at: CardClock;
   stale: boolean;
@@ -92,10 +97,10 @@ function ChannelPart({
         </Txt>
       ) : (
         <View role="list" aria-label={`Charges on ${channel.name}`}>
-          {pieces.map((piece) => (
+          {pieces.map((piece, index) => (
             <PieceRow
-              key={piece.charge.card.id}
-              {...{ plan, piece, at, stale }}
+              key={`${piece.charge.card.id}-${index}`}
+              {...{ plan, axis, piece, at, stale }}
               channelName={channel.name}
               picked={picked === piece.charge.card.id}
               onPick={() => onPick(piece.charge.card.id)}
@@ -109,6 +114,7 @@ function ChannelPart({
 
 function PieceRow({
   plan,
+  axis,
   piece,
   channelName,
   at,
@@ -117,6 +123,7 @@ function PieceRow({
   onPick,
 }: {
   plan: BenchPlanDto;
+  axis: { from: number; to: number };
   piece: LanePiece;
   channelName: string;
   at: CardClock;
@@ -178,7 +185,7 @@ function PieceRow({
           </Txt>
         </View>
         <View aria-hidden style={styles.ribbon}>
-          <CardRibbon card={card} at={at} height={30} axis={false} stale={stale} />
+          <CardRibbon card={card} at={at} height={30} axis={false} stale={stale} shared={axis} />
         </View>
       </Pressable>
     </View>

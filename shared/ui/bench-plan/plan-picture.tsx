@@ -9,7 +9,8 @@ import { ChannelLane } from './channel-lane';
 import type { Candidate, Ghost } from './move-candidate';
 import { PersonLane } from './person-lane';
 import { dayAxis, nowX, type PlanAxis } from './plan-axis';
-import { axisHeight, PlanAxisHead } from './plan-axis-head';
+import { PlanAxisHead } from './plan-axis-head';
+import { NowLine } from './now-line';
 import { PlanLegend } from './plan-legend';
 import { useLaneDrag } from './use-lane-drag';
 
@@ -81,11 +82,10 @@ export function PlanPicture({
               />
             ))}
           </View>
-          {line === null ? null : (
-            <View style={[styles.now, stale && styles.staleNow, { left: nameWidth + line - (stale ? 2.5 : 1.25) }]} />
-          )}
-          {/* Docks stand before the line of now, as in the lane of each charge the line stands before the silhouette. */}
           <View role="group" aria-label="People" style={styles.people}>
+            <View style={[styles.behind, { left: nameWidth }]}>
+              <NowLine x={line} stale={stale} />
+            </View>
             <PlanLegend nameWidth={nameWidth} />
             {plan.people.length === 0 ? (
               <Txt tone="ink2" style={styles.nobody}>
@@ -113,21 +113,8 @@ export function PlanPicture({
 const useStyles = makeStyles(({ colors }) => ({
   picture: { minHeight: 240, width: '100%' },
   channels: {},
-  people: { borderTopWidth: 1.5, borderTopColor: colors.edge, zIndex: 1 },
-  now: {
-    position: 'absolute',
-    top: axisHeight - 4,
-    bottom: 0,
-    width: 2.5,
-    backgroundColor: colors.ink,
-    pointerEvents: 'none',
-  },
-  staleNow: {
-    width: 5,
-    backgroundColor: 'transparent',
-    borderLeftWidth: 1.5,
-    borderRightWidth: 1.5,
-    borderColor: colors.ink3,
-  },
+  people: { borderTopWidth: 1.5, borderTopColor: colors.edge },
+  // Docks stand before the line of now.
+  behind: { position: 'absolute', top: 0, bottom: 0 },
   nobody: { paddingVertical: 16 },
 }));

@@ -106,7 +106,7 @@ function Move({ move, now }: { move: ProposedMoveDto; now: number }) {
         {move.text}
       </Txt>
       <Txt kind="small" tone="ink2">
-        {`${then} instead of ${before}`}
+        {then === before ? `${then}, where it would end up anyway` : `${then} instead of ${before}`}
       </Txt>
     </View>
   );

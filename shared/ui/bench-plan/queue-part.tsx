@@ -72,7 +72,7 @@ function QueueRow({
   const ready = readyWords(row, now, formats);
   const late = row.lateByMinutes > 0 ? latenessWords(row.lateByMinutes) : null;
   return (
-    <View role="listitem">
+    <View role="listitem" style={styles.item}>
       <Pressable
         role="button"
         aria-pressed={picked}
@@ -104,9 +104,8 @@ function QueueRow({
 const useStyles = makeStyles((theme) => ({
   none: { marginTop: 6 },
   list: { marginTop: 6 },
+  item: { borderTopWidth: 1, borderTopColor: theme.colors.line },
   row: {
-    borderTopWidth: 1,
-    borderTopColor: theme.colors.line,
     paddingVertical: 10,
     minHeight: touch.min,
     rowGap: 1,

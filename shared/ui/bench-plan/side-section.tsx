@@ -8,17 +8,20 @@ export function SideSection({
   title,
   aside,
   first = false,
+  id,
   children,
 }: {
   title: string;
   aside?: ReactNode;
   /** Nothing stands over it: no line. */
   first?: boolean;
+  /** To scroll to it. */
+  id?: string;
   children?: ReactNode;
 }) {
   const styles = useStyles();
   return (
-    <View role="region" aria-label={title} style={[styles.section, !first && styles.line]}>
+    <View role="region" nativeID={id} aria-label={title} style={[styles.section, !first && styles.line]}>
       <View style={styles.head}>
         <Txt kind="heading" heading={2} style={styles.title}>
           {title}

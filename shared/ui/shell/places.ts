@@ -15,6 +15,8 @@ const tabs: Readonly<Record<string, Place['tab']>> = {
   '/alerts': 'alerts',
   '/more': 'more',
   '/bench-plan': 'more',
+  '/my-day': 'bench',
+  '/work': 'more',
   '/waits': 'more',
   '/workshop': 'more',
 };
@@ -25,7 +27,7 @@ export function placeOf(path: string): Place {
   const first = bare.split('/')[1] ?? '';
   const rail =
     (['bench-plan', 'repairs', 'spares', 'alerts', 'waits', 'workshop', 'more'] as const).find(
-      (key) => key === (first === 'me' ? 'more' : first),
+      (key) => key === (first === 'me' || first === 'work' ? 'more' : first),
     ) ?? 'bench';
   return { tab: tabs[bare] ?? null, rail };
 }
@@ -93,6 +95,12 @@ const titles: Readonly<Record<string, string>> = {
   bench: 'Bench',
   'bench-plan': 'Bench plan',
   plan: 'Plan a charge',
+  'my-day': 'My day',
+  'work/index': 'Other work',
+  'work/new': 'Add other work',
+  'work/[id]': 'Other work',
+  'work/[id]/index': 'Other work',
+  'work/[id]/edit': 'Change other work',
   more: 'More',
   me: 'Name and password',
   alerts: 'Alerts',

@@ -102,7 +102,13 @@ const useStyles = makeStyles(({ colors }) => ({
   // Its minutes are all a free stretch says: they need the room more than the air.
   tight: { paddingHorizontal: 2 },
   fill: { backgroundColor: colors.sheet, borderWidth: stroke.control, borderColor: colors.ink, borderLeftWidth: 5 },
-  free: { borderWidth: stroke.control, borderColor: colors.edge, borderStyle: 'dashed' },
+  free: {
+    borderWidth: stroke.control,
+    borderColor: colors.edge,
+    borderStyle: 'dashed',
+    backgroundColor: colors.ground,
+  },
   own: { backgroundColor: colors.well },
-  break: { alignItems: 'center' },
+  // A line of now behind it would go through its word.
+  break: { alignItems: 'center', backgroundColor: colors.ground },
 }));

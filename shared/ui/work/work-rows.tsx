@@ -79,7 +79,8 @@ function WorkTable({ work, now, onOpen }: WorkShown) {
   );
 }
 
-function WorkList({ work, now, onOpen }: WorkShown) {
+/** Rows, for the phone and for narrow columns. `within` a repair its number is not said again. */
+export function WorkList({ work, now, within = false, onOpen }: WorkShown & { within?: boolean }) {
   const styles = useStyles();
   const { zone, marks } = useFormats();
   return (
@@ -97,7 +98,7 @@ function WorkList({ work, now, onOpen }: WorkShown) {
             >
               <View style={styles.line}>
                 <Txt bold style={styles.shrink}>
-                  {workTitle(one)}
+                  {within ? one.title : workTitle(one)}
                 </Txt>
                 {due ? (
                   <Txt kind="small" tone={late ? 'alarm' : 'ink2'} bold={late} nowrap>
