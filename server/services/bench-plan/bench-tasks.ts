@@ -38,6 +38,8 @@ export interface EarlyStart {
 }
 export interface EarlyStartFound {
   spareId: string;
+  /** What it is brought to, V per group. */
+  aimVolts: number;
   /** Null: it rests there already. */
   channelId: string | null;
   takesS: Band;

@@ -118,6 +118,7 @@ async function startOf(
     typeName: file.packTypeName ?? type.name,
     usualVolts: usual.volts,
     arrivals: usual.arrivals,
+    aimVolts: best.aimVolts,
     spare: { id: spare.id, label: spare.label, shelfPlace: spare.shelfPlace },
     channelName: names[best.channelId!]?.name ?? '',
     takes: { p10S: best.takesS.p10, p50S: best.takesS.p50, p90S: best.takesS.p90 },

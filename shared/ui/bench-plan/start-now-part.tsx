@@ -10,7 +10,13 @@ import { SideSection } from './side-section';
 
 /** The address of Plan a charge with what a start now needs. */
 export const startPath = (one: StartNowDto): string =>
-  `/plan?${new URLSearchParams({ spare: one.spare.id, target: String(one.usualVolts), repair: one.number }).toString()}`;
+  `/plan?${new URLSearchParams({ spare: one.spare.id, target: String(one.aimVolts), repair: one.number }).toString()}`;
+
+/** Why it is brought there. */
+const whereTo = (one: StartNowDto, usual: string): string =>
+  one.aimVolts === one.usualVolts
+    ? 'Packs of this type usually arrive there'
+    : `No channel here takes it down again, and packs of this type arrive at ${usual} and below`;
 
 /** Booked repairs whose spare could be brought close before the pack comes: what it takes, and what it saves. */
 export function StartNowPart({ rows, onGo }: { rows: readonly StartNowDto[]; onGo: (path: string) => void }) {
@@ -36,7 +42,7 @@ export function StartNowPart({ rows, onGo }: { rows: readonly StartNowDto[]; onG
                   {`Saves ${duration(one.savesS)} of wait: ${durationWithBand({ p10: one.takes.p10S, p50: one.takes.p50S, p90: one.takes.p90S })} now on ${one.channelName}, then ${duration(one.thenS)} once it is read.`}
                 </Txt>
                 <Txt kind="small" tone="ink2">
-                  {`${one.spare.label}${shelf}, to ${volts(one.usualVolts, marks)}, where packs of this type usually arrive (${known}).`}
+                  {`${one.spare.label}${shelf}, to ${volts(one.aimVolts, marks)}. ${whereTo(one, volts(one.usualVolts, marks))} (${known}).`}
                 </Txt>
               </View>
               <Link

@@ -132,6 +132,7 @@ export const startNow: StartNowDto[] = [
     vehicle: 'Blue van',
     typeName: '2-series 66 Ah',
     usualVolts: 3.85,
+    aimVolts: 3.85,
     arrivals: 12,
     spare: { id: 's22', label: 'S-0422', shelfPlace: 'D3' },
     channelName: 'C1',
