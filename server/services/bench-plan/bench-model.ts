@@ -1,4 +1,5 @@
 /** The bench as a problem of which charge goes where and when: what may move, on which channels, and what is in the way. */
+import { setImmediate } from 'node:timers/promises';
 import type { EntityManager } from 'typeorm';
 import type { Band } from '@/calc/plan-types';
 import type { ChargeFile } from '../charge-file';
@@ -67,6 +68,8 @@ export async function benchModel(
     } catch (error) {
       stuck.set(file.charge.id, whyNotAgain(error));
     }
+    // A score of charges is a tenth of a second of rows: others get their turn in between.
+    await setImmediate();
   }
   const moving = new Set(movables.map(({ file }) => file.charge.id));
   const taken = files.filter(({ charge }) => !moving.has(charge.id)).flatMap((file) => spansAhead(file, now, until));
@@ -114,8 +117,23 @@ export function mayBegin(
   file: ChargeFile,
   busyMs: number,
 ): Stretch[] {
-  const { ground, origin, until } = model;
-  const clipMs = file.charge.frozen.workshop.clipOnS * 1000;
+  const { clipOnS } = file.charge.frozen.workshop;
+  const known = begins.get(model.ground) ?? new Map<string, Stretch[]>();
+  begins.set(model.ground, known);
+  const key = [model.origin, model.until, clipOnS, busyMs].join();
+  const found = known.get(key) ?? beginsOf(model, clipOnS * 1000, busyMs);
+  known.set(key, found);
+  return found;
+}
+
+/** What was worked out for a ground; asked for again with every place that is tried. */
+const begins = new WeakMap<BenchGround, Map<string, Stretch[]>>();
+
+function beginsOf(
+  { ground, origin, until }: Pick<BenchModel, 'ground' | 'origin' | 'until'>,
+  clipMs: number,
+  busyMs: number,
+): Stretch[] {
   const upTo = (stretches: readonly Stretch[], ms: number): Stretch[] =>
     united(stretches)
       .map(({ from, to }) => ({ from, to: to - ms }))

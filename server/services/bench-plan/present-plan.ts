@@ -1,15 +1,6 @@
 /** Today's plan as it will come about: what runs late pushes what waits behind it. */
-import {
-  busyOf,
-  lateMs,
-  mayBegin,
-  onChannels,
-  spansOf,
-  type BenchModel,
-  type Movable,
-  type Placed,
-} from './bench-model';
-import { earliestBegin, overlaps } from './spans';
+import { lateMs, mayBegin, onChannels, spansOf, type BenchModel, type Movable, type Placed } from './bench-model';
+import { earliestBegin } from './spans';
 import type { HeldSpan } from './held-spans';
 
 /** A place this much off the planned one is the planned one still, ms. */
@@ -44,6 +35,9 @@ export function presentPlan(model: BenchModel): Placements {
   return placements;
 }
 
+/** All being ready less than this sooner is not worth a change, ms. */
+export const LEAST_SOONER_MS = 30 * 60_000;
+
 export interface Worth {
   /** Σ weight · lateness, ms. */
   lateMs: number;
@@ -61,38 +55,6 @@ export function worthOf(movables: readonly Movable[], placements: Placements): W
     endsAt = Math.max(endsAt, placed.at + placed.totalS.p50 * 1000);
   }
   return { lateMs: late, endsAt };
-}
-
-/**
- * Leaves as many charges where they stand as the better plan allows: a plan that shuffles five charges where one has to
- * move is no better to those who carry it out.
- */
-export function fewestMoves(model: BenchModel, present: Placements, found: Placements): Placements {
-  const plan = new Map(found);
-  let worth = worthOf(model.movables, plan);
-  for (let again = true; again;) {
-    again = false;
-    for (const movable of model.movables) {
-      const id = idOf(movable);
-      const before = plan.get(id);
-      const stays = present.get(id);
-      if (!before || !stays || before === stays || !fits(model, movable, stays, plan)) continue;
-      const tried = new Map(plan).set(id, stays);
-      const now = worthOf(model.movables, tried);
-      if (now.lateMs > worth.lateMs + 1000 || now.endsAt > worth.endsAt + 1000) continue;
-      plan.set(id, stays);
-      worth = now;
-      again = true;
-    }
-  }
-  return plan;
-}
-
-function fits(model: BenchModel, movable: Movable, placed: Placed, plan: Placements): boolean {
-  const others = [...plan].filter(([id]) => id !== idOf(movable)).flatMap(([, one]) => spansOf(one));
-  const taken = onChannels([...model.taken, ...others], placed.channelIds);
-  if (taken.some((one) => overlaps(one, busyOf(placed)))) return false;
-  return mayBegin(model, movable.file, placed.busyMs).some(({ from, to }) => placed.at >= from && placed.at <= to);
 }
 
 /** On the same channels, at the same time but for some minutes. */

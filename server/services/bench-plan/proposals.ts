@@ -2,10 +2,10 @@
 import { createHash } from 'node:crypto';
 import type { BenchProblem, BenchSolution } from '@/calc/bench/bench-types';
 import type { BenchSolver } from './bench-solver';
-import { mayBegin, onChannels, placedBy, type BenchModel, type Movable, type Placed } from './bench-model';
+import { mayBegin, onChannels, placedBy, spansOf, type BenchModel, type Movable, type Placed } from './bench-model';
+import { fewMoves } from './few-moves';
 import type { HeldSpan } from './held-spans';
 import {
-  fewestMoves,
   idOf,
   isSamePlace,
   presentPlan,
@@ -13,12 +13,12 @@ import {
   worthOf,
   type Placements,
   type Worth,
+  LEAST_SOONER_MS,
 } from './present-plan';
 import { united, type Stretch } from './spans';
 
-/** A minute less of lateness is worth a change; all being ready a few minutes sooner is not, ms. */
+/** Less lateness than this is not worth a change, ms. */
 const LEAST_LATE_MS = 60_000;
-const LEAST_SOONER_MS = 30 * 60_000;
 
 export interface ProposedMove {
   movable: Movable;
@@ -41,23 +41,34 @@ export interface Proposal {
 /** @returns null where nothing is better */
 export async function betterPlan(model: BenchModel, solver: BenchSolver): Promise<Proposal | null> {
   if (model.movables.length === 0) return null;
+  const first = await solver.bench(problemOf(model));
+  if (first.unplaced.length === 0) return compared(model, first, []);
+  // What has no place under the rules stays where somebody has put it, and the others are planned around it.
+  const isPlaced = (movable: Movable): boolean => !first.unplaced.includes(idOf(movable));
+  const unplaced = model.movables.filter((movable) => !isPlaced(movable));
+  const around: BenchModel = {
+    ...model,
+    movables: model.movables.filter(isPlaced),
+    taken: [...model.taken, ...unplaced.flatMap(({ present }) => spansOf(present))],
+  };
+  return around.movables.length === 0 ? null : compared(around, await solver.bench(problemOf(around)), unplaced);
+}
+
+function compared(model: BenchModel, solution: BenchSolution, unplaced: Movable[]): Proposal | null {
+  const found = placementsOf(model, solution);
+  if (found.size < model.movables.length) return null;
   const present = presentPlan(model);
-  const solution = await solver.bench(problemOf(model));
-  const placed = placementsOf(model, solution);
-  const unplaced = model.movables.filter((movable) => !placed.has(idOf(movable)));
-  // What has no place under the rules stays where somebody has put it.
-  const placeable = { ...model, movables: model.movables.filter((movable) => placed.has(idOf(movable))) };
-  const plan = fewestMoves(placeable, present, placed);
-  const [now, then] = [worthOf(placeable.movables, present), worthOf(placeable.movables, plan)];
+  const plan = fewMoves(model, present, found);
+  const [now, then] = [worthOf(model.movables, present), worthOf(model.movables, plan)];
   const isBetter =
     then.lateMs < now.lateMs - LEAST_LATE_MS ||
     (then.lateMs <= now.lateMs && then.endsAt < now.endsAt - LEAST_SOONER_MS) ||
     // Those that are pushed aside today need another time, whatever they are worth.
-    (then.lateMs <= now.lateMs && pushed(placeable, present).length > 0);
+    (then.lateMs <= now.lateMs && pushed(model, present).length > 0);
   if (!isBetter) return null;
   const moves: ProposedMove[] = [];
   const stay: Movable[] = [];
-  for (const movable of placeable.movables) {
+  for (const movable of model.movables) {
     const at = plan.get(idOf(movable))!;
     const stands = present.get(idOf(movable))!;
     // Against what is written on the plan: what is pushed aside gets its new time with it.

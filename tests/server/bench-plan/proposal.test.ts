@@ -2,7 +2,7 @@ import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import type { BenchChangeDto } from '@/shared/contract/bench-plan';
 import type { ProblemDto } from '@/shared/contract/common';
 import { answered, at, did, hour, makeBench, minute, running, seen, type Bench } from '../charges/bench';
-import { clock, onlyTwoWork, placeOf, planOf, proposalOf, queued, sent, timeOf } from './day';
+import { clock, hoursOf, onlyTwoWork, placeOf, planOf, proposalOf, queued, sent, timeOf } from './day';
 
 /*
  * By hand: 60 Ah a group from 26.97 % to 58.26 % are 18.77 Ah, at 10 A 1 h 53 of current. With 5 min to clip on, an hour of
@@ -113,6 +113,58 @@ describe('a proposal on one channel of 10 A', () => {
     expect(answer.status).toBe(409);
     expect((answer.body as ProblemDto).detail).toBe('This cannot be undone. R-2 is begun.');
     expect((await planOf(bench)).lastChange!.lastingBecause).toBe('R-2 is begun.');
+  });
+});
+
+describe('a proposal on two channels', () => {
+  let bench: Bench;
+  beforeEach(async () => {
+    bench = await makeBench({ channels: [{ name: 'A1' }, { name: 'B1' }] });
+    await onlyTwoWork(bench);
+  });
+  afterEach(() => bench.server.close());
+
+  it('moves the one charge that has to move, and leaves the four others as they are', async () => {
+    // Four without a due time, two after two; the fifth, third on A1, is due at 15:30 and ready about 17:20.
+    for (const [ref, channel, at] of [
+      ['R-1', 'A1', '10:05'],
+      ['R-2', 'B1', '10:05'],
+      ['R-3', 'A1', '12:15'],
+      ['R-4', 'B1', '14:15'],
+    ] as const)
+      await queued(bench, { spareId: await bench.spare(ref), repairRef: ref }, channel, clock(at));
+    const wish = { spareId: await bench.spare('R-5'), repairRef: 'R-5', readyBy: clock('15:45') };
+    const late = await queued(bench, wish, 'A1', clock('14:20'));
+    const found = (await proposalOf(bench))!;
+    // B1 is free from 12:03 to 14:15: 1 h 58 go into that, and it is ready about 15:08.
+    expect(found.moves.map(({ chargeId }) => chargeId)).toEqual([late.id]);
+    expect(found.moves[0]!.then).toMatchObject({ channelNames: ['B1'], lateByMinutes: 0 });
+    expect(found.asTheyAre).toEqual(['R-1', 'R-2', 'R-3', 'R-4'].map((ref) => `${ref} as it is`));
+    expect(found.lateMinutes.then).toBe(0);
+  });
+
+  it('says of a charge that no shift is long enough for it, and plans the others around it', async () => {
+    const shift = Array.from({ length: 7 }, () => ({ from: '10:00', to: '13:00' }));
+    const { people } = bench.server.own;
+    for (const { id } of [people.technician, people.foreman]) await hoursOf(bench, id, { hours: shift });
+    // From 3.6 V it takes more than twice the charge: over 3 h of current, and nobody is there for longer than 3 h.
+    const far = await queued(
+      bench,
+      { spareId: await bench.spare('S-1', [3.6, 3.6]), repairRef: 'R-1' },
+      'A1',
+      clock('10:05'),
+    );
+    expect(far.option.currentEndS).toBeGreaterThan(3 * 3600);
+    const wish = { spareId: await bench.spare('S-2'), repairRef: 'R-2', readyBy: clock('14:00') };
+    const near = await queued(bench, wish, 'A1', clock('10:05'));
+    const found = (await proposalOf(bench))!;
+    expect(found.unplaced).toHaveLength(1);
+    expect(found.unplaced[0]!.title).toBe('R-1');
+    expect(found.unplaced[0]!.because).toMatch(
+      /^Its current takes 3\u00a0h\u00a0\d\d, longer than anybody is there at a stretch\./,
+    );
+    expect(found.moves.map(({ chargeId, then }) => [chargeId, then.channelNames])).toEqual([[near.id, ['B1']]]);
+    expect((await sent(bench, 'accept', { proposalId: found.id })).status).toBe(200);
   });
 });
 
