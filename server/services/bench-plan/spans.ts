@@ -1,4 +1,7 @@
 /** Stretches of instants, epoch ms. */
+import { intersect, merge, subtract } from '@/calc/index';
+import type { Stretch as CoreStretch } from '@/calc/bench/bench-types';
+
 export interface Stretch {
   from: number;
   to: number;
@@ -6,43 +9,20 @@ export interface Stretch {
 
 export const overlaps = (one: Stretch, other: Stretch): boolean => one.from < other.to && other.from < one.to;
 
+// The reckoning with stretches is the core's; its seconds may as well be the milliseconds of the server.
+const toCore = ({ from, to }: Stretch): CoreStretch => ({ fromS: from, toS: to });
+const fromCore = ({ fromS, toS }: CoreStretch): Stretch => ({ from: fromS, to: toS });
+
 /** Sorted, and those that touch or overlap as one. */
-export function united(stretches: readonly Stretch[]): Stretch[] {
-  const found: Stretch[] = [];
-  for (const one of [...stretches].sort((a, b) => a.from - b.from)) {
-    if (one.to <= one.from) continue;
-    const last = found.at(-1);
-    if (last && one.from <= last.to) last.to = Math.max(last.to, one.to);
-    else found.push({ ...one });
-  }
-  return found;
-}
+export const united = (stretches: readonly Stretch[]): Stretch[] => merge(stretches.map(toCore)).map(fromCore);
 
 /** What is in both. */
-export function common(some: readonly Stretch[], others: readonly Stretch[]): Stretch[] {
-  const found: Stretch[] = [];
-  for (const one of united(some))
-    for (const other of united(others)) {
-      const both = { from: Math.max(one.from, other.from), to: Math.min(one.to, other.to) };
-      if (both.to > both.from) found.push(both);
-    }
-  return found;
-}
+export const common = (some: readonly Stretch[], others: readonly Stretch[]): Stretch[] =>
+  intersect(some.map(toCore), others.map(toCore)).map(fromCore);
 
 /** The first without the others. */
-export function without(some: readonly Stretch[], others: readonly Stretch[]): Stretch[] {
-  let left = united(some);
-  for (const other of united(others))
-    left = left.flatMap((one) =>
-      overlaps(one, other)
-        ? [
-            { from: one.from, to: other.from },
-            { from: other.to, to: one.to },
-          ].filter(({ from, to }) => to > from)
-        : [one],
-    );
-  return left;
-}
+export const without = (some: readonly Stretch[], others: readonly Stretch[]): Stretch[] =>
+  subtract(some.map(toCore), others.map(toCore)).map(fromCore);
 
 export const lengthOf = (stretches: readonly Stretch[]): number =>
   united(stretches).reduce((sum, { from, to }) => sum + to - from, 0);
