@@ -8,10 +8,11 @@ import path from 'node:path';
  * @param source database file
  * @param folder where the copy goes; made when missing
  * @param now instant in the copy's name
+ * @param kind 'clock': made by the clock, and so removed by it one day
  * @returns the copy's path
  * @throws Error when there is no database or the copy does not pass SQLite's integrity check
  */
-export async function backUp(source: string, folder: string, now: Date): Promise<string> {
+export async function backUp(source: string, folder: string, now: Date, kind?: 'clock'): Promise<string> {
   if (!fs.existsSync(source))
     throw new Error(`There is no database at ${source}. Set BIDEWELL_DATA to the data folder of the server.`);
   fs.mkdirSync(folder, { recursive: true });
@@ -19,11 +20,15 @@ export async function backUp(source: string, folder: string, now: Date): Promise
     .toISOString()
     .replace(/\.\d+Z$/, 'Z')
     .replaceAll(':', '-');
-  const file = path.join(folder, `bidewell-${stamp}.sqlite`);
+  const file = path.join(folder, `bidewell-${kind ? `${kind}-` : ''}${stamp}.sqlite`);
   const unfinished = `${file}.unfinished`;
   const database = new Database(source, { readonly: true, fileMustExist: true });
   try {
     await database.backup(unfinished);
+  } catch (error) {
+    // A disk that is full is not made fuller by what nobody can use.
+    fs.rmSync(unfinished, { force: true });
+    throw error;
   } finally {
     database.close();
   }

@@ -20,6 +20,10 @@ const environment = z.object({
   /** The address people open, where it is not the one the server listens on. */
   BIDEWELL_URL: z.url().optional(),
   BIDEWELL_LOG: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
+  /** Hours between two copies of the data; 0: none by itself. */
+  BIDEWELL_BACKUP_HOURS: z.coerce.number().min(0).max(168).default(1),
+  /** Opens /metrics to whoever sends it. */
+  BIDEWELL_METRICS_TOKEN: z.string().min(16).optional(),
   METRO_PORT: z.coerce.number().int().optional(),
 });
 
@@ -34,6 +38,10 @@ export interface Config {
   publicUrl: string | null;
   logLevel: string;
   metroPort: number | null;
+  /** Hours between two copies of the data made by the clock; 0: none. */
+  backupHours: number;
+  /** Null: nobody reads the figures of the process. */
+  metricsToken: string | null;
 }
 
 /** Whether a host to listen on means every address of this machine, and so is none to be opened itself. */
@@ -66,5 +74,7 @@ export function readConfig(env: NodeJS.ProcessEnv): Config {
     publicUrl: e.BIDEWELL_URL ?? null,
     logLevel: e.BIDEWELL_LOG,
     metroPort: e.METRO_PORT ?? null,
+    backupHours: e.BIDEWELL_BACKUP_HOURS,
+    metricsToken: e.BIDEWELL_METRICS_TOKEN ?? null,
   };
 }

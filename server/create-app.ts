@@ -2,6 +2,7 @@ import compression from 'compression';
 import express, { type Express } from 'express';
 import type { Deps } from './deps';
 import { metroProxy } from './middleware/metro-proxy';
+import { measure } from './middleware/measure';
 import { notHere, problems } from './middleware/problems';
 import { requestLog } from './middleware/request-log';
 import { sameOrigin } from './middleware/same-origin';
@@ -20,6 +21,7 @@ export function createApp(deps: Deps): Express {
   app.set('trust proxy', config.proxyHops);
   app.set('query parser', 'simple');
   app.use(requestLog(deps.log));
+  app.use(measure(deps.metrics));
   app.use(unbelievedProxy(deps.log, config.proxyHops));
 
   const web = webApp(config.webDir);

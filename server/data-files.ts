@@ -13,3 +13,5 @@ export const databaseFile = (dataDir: string): string => path.join(dataDir, 'bid
 export const photoFolder = (dataDir: string): string => path.join(dataDir, 'photos');
 /** Where copies of it go unless somebody says otherwise. */
 export const backupFolder = (dataDir: string): string => path.join(dataDir, 'backups');
+/** Held by the server that works on the folder. */
+export const lockFile = (dataDir: string): string => path.join(dataDir, 'server.lock');

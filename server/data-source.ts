@@ -1,7 +1,8 @@
 import 'reflect-metadata';
 import type BetterSqlite3 from 'better-sqlite3';
-import { DataSource } from 'typeorm';
+import { DataSource, type Logger } from 'typeorm';
 import { entities } from './entities/all';
+import { SLOW_QUERY_MS } from './middleware/query-log';
 import { migrations } from './migrations/all';
 
 /** How long a statement waits for another process' lock (a backup, a shell) before it gives up, ms. */
@@ -18,8 +19,11 @@ function prepareDatabase(database: BetterSqlite3.Database): void {
   database.pragma(`busy_timeout = ${busyTimeoutMs}`);
 }
 
-/** The one connection of the process; `:memory:` for tests. */
-export function makeDataSource(database: string): DataSource {
+/**
+ * The one connection of the process; `:memory:` for tests.
+ * @param logger hears of slow statements; left out: nobody does
+ */
+export function makeDataSource(database: string, logger?: Logger): DataSource {
   return new DataSource({
     type: 'better-sqlite3',
     database,
@@ -27,6 +31,7 @@ export function makeDataSource(database: string): DataSource {
     migrations,
     migrationsTransactionMode: 'each',
     synchronize: false,
+    ...(logger ? { logger, maxQueryExecutionTime: SLOW_QUERY_MS } : {}),
     prepareDatabase: (connection: BetterSqlite3.Database) => prepareDatabase(connection),
   });
 }

@@ -6,8 +6,10 @@ import type { Config } from './config';
 import type { Lifecycle } from './lifecycle';
 import type { LiveHub } from './live/hub';
 import type { Sleeper } from './live/sleeper';
+import type { Backups } from './services/backups';
 import type { BenchSolver } from './services/bench-plan/bench-solver';
 import type { Limits } from './services/limits';
+import type { Metrics } from './services/metrics';
 import type { Passwords } from './services/passwords';
 import type { Secrets } from './services/secrets';
 
@@ -28,6 +30,9 @@ export interface Deps {
   secrets: Secrets;
   /** Throttles, kept in memory. */
   limits: Limits;
+  /** Copies of the data. */
+  backups: Backups;
+  metrics: Metrics;
 }
 
 /** Who asks, from the session; never from the request's body. */

@@ -2,4 +2,6 @@
 export interface Lifecycle {
   /** False before everything is up, and again from the first signal to stop. */
   ready: boolean;
+  /** When the process began, epoch ms. */
+  startedAt: number;
 }

@@ -1,5 +1,4 @@
-import http from 'node:http';
-import https from 'node:https';
+import type http from 'node:http';
 import type { AddressInfo } from 'node:net';
 import type { Logger } from 'pino';
 import type { DataSource } from 'typeorm';
@@ -10,15 +9,22 @@ import { assertDurable, makeDataSource } from './data-source';
 import { databaseFile, prepareDataFolder } from './data-files';
 import { seedDemo } from './demo/seed';
 import type { Deps } from './deps';
+import { lockFolder, type FolderLock } from './folder-lock';
 import type { Lifecycle } from './lifecycle';
+import { makeHttpServer } from './http-server';
 import { makeSleeper } from './live/sleeper-loop';
 import { makeSocketHub } from './live/socket-hub';
 import { proxyMetroUpgrades } from './middleware/metro-proxy';
+import { queryLog } from './middleware/query-log';
 import { migrate } from './migrate';
+import { earliestDueAt } from './repositories/charges.repository';
+import { makeBackups } from './services/backups';
 import { makeBenchSolver } from './services/bench-plan/bench-solver';
 import { makeLimits } from './services/limits';
+import { makeMetrics } from './services/metrics';
 import { makePasswords } from './services/passwords';
 import { loadSecrets } from './services/secrets';
+import { version } from './services/version';
 import { sweepPhotos } from './sweep-photos';
 
 /** Requests under way get this long to end when the server stops, ms. */
@@ -71,9 +77,34 @@ async function sweptPhotos(dataSource: DataSource, config: Config, now: number, 
  */
 export async function startServer(config: Config, log: Logger, clock: Clock = systemClock): Promise<RunningServer> {
   prepareDataFolder(config.dataDir);
+  const lock = lockFolder(config.dataDir);
+  try {
+    return await startLocked(config, log, clock, lock);
+  } catch (error) {
+    lock.release();
+    throw error;
+  }
+}
+
+/** What is read whenever the figures of the process are asked for. */
+function watchProcess({ metrics, hub, backups, clock, dataSource }: Deps): void {
+  const secondsSince = (at: number): number => Math.max(0, (clock.now() - at) / 1000);
+  metrics.watch('sockets', () => hub.connected(null));
+  metrics.watch('backup_age_seconds', () => {
+    const [newest] = backups.state().copies;
+    return newest ? secondsSince(newest.at) : -1;
+  });
+  metrics.watch('sleeper_behind_seconds', async () => {
+    const dueAt = await earliestDueAt(dataSource.manager, []);
+    return dueAt === null ? 0 : secondsSince(dueAt);
+  });
+}
+
+async function startLocked(config: Config, log: Logger, clock: Clock, lock: FolderLock): Promise<RunningServer> {
   const secrets = loadSecrets(config.dataDir);
-  const dataSource = await makeDataSource(databaseFile(config.dataDir)).initialize();
-  const lifecycle: Lifecycle = { ready: false };
+  const metrics = makeMetrics(version);
+  const dataSource = await makeDataSource(databaseFile(config.dataDir), queryLog(log, metrics)).initialize();
+  const lifecycle: Lifecycle = { ready: false, startedAt: clock.now() };
   const passwords = makePasswords();
   const bench = makeBenchSolver();
   try {
@@ -83,19 +114,38 @@ export async function startServer(config: Config, log: Logger, clock: Clock = sy
     const hub = makeSocketHub({ config, dataSource, secrets, clock, log });
     const sleeper = makeSleeper({ dataSource, clock, log, hub });
     const limits = makeLimits();
-    const deps: Deps = { dataSource, clock, config, log, hub, sleeper, lifecycle, passwords, bench, secrets, limits };
+    const { dataDir, backupHours: everyHours } = config;
+    const backups = makeBackups({ dataDir, everyHours, clock, log });
+    const deps: Deps = {
+      dataSource,
+      clock,
+      config,
+      log,
+      hub,
+      sleeper,
+      lifecycle,
+      passwords,
+      bench,
+      secrets,
+      limits,
+      backups,
+      metrics,
+    };
     if (config.demo) await seedDemo(deps);
     const app = createApp(deps);
-    const server = config.tls ? https.createServer(config.tls, app) : http.createServer(app);
+    const server = makeHttpServer(config, app);
     hub.attach(server);
     if (config.metroPort !== null) proxyMetroUpgrades(server, config.metroPort);
     await quietly(sweptPhotos(dataSource, config, clock.now(), log), log, 'the photos were not swept');
     await sleeper.start();
     const port = await listenOn(server, config);
     lifecycle.ready = true;
+    watchProcess(deps);
+    backups.start();
     const stop = async () => {
       lifecycle.ready = false;
       const drained = setTimeout(() => server.closeAllConnections(), drainMs);
+      await quietly(backups.stop(), log, 'the copying did not stop');
       await quietly(sleeper.stop(), log, 'the sleeper did not stop');
       // Closes the sockets and the server's port; resolves when the last request under way has ended.
       await quietly(hub.close(), log, 'the sockets did not close');
@@ -104,6 +154,8 @@ export async function startServer(config: Config, log: Logger, clock: Clock = sy
       await quietly(bench.close(), log, 'the thread of the bench plan did not end');
       await quietly(dataSource.query('PRAGMA wal_checkpoint(TRUNCATE)'), log, 'the write-ahead log was not emptied');
       await quietly(dataSource.destroy(), log, 'the database did not close');
+      metrics.close();
+      lock.release();
     };
     return { address: addressOf(config, port), port, deps, stop };
   } catch (error) {

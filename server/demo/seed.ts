@@ -46,7 +46,7 @@ export async function seedDemo(deps: Deps): Promise<void> {
   deps.log.info('making the demo workshop; this takes some seconds');
   const quiet: Deps = {
     ...deps,
-    hub: { toWorkshop: () => {}, toPerson: () => {}, end: () => {} },
+    hub: { toWorkshop: () => {}, toPerson: () => {}, connected: () => 0, end: () => {} },
     sleeper: { poke: () => {} },
   };
   try {

@@ -161,6 +161,13 @@ export function makeSocketHub(deps: HubDeps): SocketHub {
         payload,
       ),
     toPerson: (_workshopId, personId, event, payload) => emit([rooms.person(personId)], event, payload),
+    connected: (workshopId) =>
+      workshopId === null
+        ? io.sockets.sockets.size
+        : [rooms.members(workshopId), rooms.walls(workshopId)].reduce(
+            (sum, room) => sum + (io.sockets.adapter.rooms.get(room)?.size ?? 0),
+            0,
+          ),
     end: (target, reason) => {
       const room =
         'sessionId' in target

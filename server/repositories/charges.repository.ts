@@ -1,4 +1,4 @@
-import { In, IsNull, LessThanOrEqual, MoreThan, Not, type EntityManager } from 'typeorm';
+import { In, IsNull, LessThan, LessThanOrEqual, MoreThan, Not, type EntityManager } from 'typeorm';
 import { openStages, type Stage } from '@/shared/contract/charge';
 import { Charge } from '../entities/charge';
 import { Workshop } from '../entities/workshop';
@@ -114,6 +114,10 @@ export async function listDueCharges(
     take: limit,
   });
 }
+
+/** How many charges of a workshop have a due instant before `before` (epoch ms). */
+export const countDueBefore = (manager: EntityManager, workshopId: string, before: number): Promise<number> =>
+  manager.countBy(Charge, { workshopId, nextDueAt: LessThan(before) });
 
 /** Earliest due instant of all workshops, epoch ms, but those of `skip`; null: nothing waits. */
 export async function earliestDueAt(manager: EntityManager, skip: readonly string[]): Promise<number | null> {

@@ -39,6 +39,17 @@ export const listOpenWorkOf = (
 export const listOverWorkOf = (manager: EntityManager, workshopId: string, repairId: string): Promise<Work[]> =>
   manager.find(Work, { where: { workshopId, repairId, overAt: Not(IsNull()) }, order: { id: 'ASC' } });
 
+/** All work for these repairs, in the order it was added. */
+export const workOfRepairs = (
+  manager: EntityManager,
+  workshopId: string,
+  repairIds: readonly string[],
+): Promise<Work[]> =>
+  manager.find(Work, {
+    where: { workshopId, repairId: In([...repairIds]) },
+    order: { createdAt: 'ASC', id: 'ASC' },
+  });
+
 export async function workById(
   manager: EntityManager,
   workshopId: string,

@@ -7,12 +7,14 @@ import { customersRoutes } from './customers.routes';
 import type { RoutesModule } from './define-route';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
+import { metricsRoutes } from './metrics.routes';
 import { peopleRoutes } from './people.routes';
 import { photosRoutes } from './photos.routes';
 import { plansRoutes } from './plans.routes';
 import { repairsRoutes } from './repairs.routes';
 import { searchRoutes } from './search.routes';
 import { sessionRoutes } from './session.routes';
+import { statusRoutes } from './status.routes';
 import { staffingRoutes } from './staffing.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
@@ -22,6 +24,8 @@ import { workshopRoutes } from './workshop.routes';
 
 export const routesModules: RoutesModule[] = [
   healthRoutes,
+  metricsRoutes,
+  statusRoutes,
   sessionRoutes,
   peopleRoutes,
   workshopRoutes,

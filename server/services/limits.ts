@@ -14,6 +14,8 @@ const addressRules = {
   estimate: { points: 120, durationS: 60 },
   /** Papers are drawn anew for every question. */
   papers: { points: 60, durationS: 60 },
+  /** A copy of all data reads and writes all of it. */
+  backup: { points: 6, durationS: 600 },
   createWorkshop: { points: 5, durationS: 3600 },
   join: { points: 20, durationS: 600 },
   wallCode: { points: 20, durationS: 600 },

@@ -20,8 +20,19 @@ export async function isAnybodyThere(
   );
 }
 
-/** Null: nobody is there for it, or none is due. */
-export async function lookInPerson(
+/**
+ * Null: nobody is there for it, or none is due. Null too where the day cannot be laid out because another charge cannot
+ * be reckoned: the alert must come all the same.
+ */
+export async function lookInPerson(manager: EntityManager, file: ChargeFile, now: number): Promise<string | null> {
+  try {
+    return await assignedPerson(manager, file, now);
+  } catch {
+    return null;
+  }
+}
+
+async function assignedPerson(
   manager: EntityManager,
   { charge, workshop }: ChargeFile,
   now: number,

@@ -1,20 +1,10 @@
+import { randomUUID } from 'node:crypto';
 import fs from 'node:fs';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
-import type { BenchChangeDto, BenchPlanDto, MovePlacesDto } from '@/shared/contract/bench-plan';
+import type { BenchPlanDto, MovePlacesDto } from '@/shared/contract/bench-plan';
 import { describeInBrowser, type Visitor } from '../support/browser';
-import {
-  button,
-  field,
-  heading,
-  judge,
-  member,
-  openHouse,
-  patience,
-  words,
-  type House,
-  type ScreenSize,
-} from './house';
+import { button, heading, judge, member, openHouse, patience, words, type House, type ScreenSize } from './house';
 
 /** The charge of the demo that waits in the queue. */
 const queued = 'R-2418';
@@ -34,12 +24,11 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
 
     const url = (path: string) => `${house.server.url}/api${path}`;
     const read = async <T>(path: string) => (await (await foreman.context.request.get(url(path))).json()) as T;
-    const post = async <T>(path: string, data: object): Promise<T> => {
-      const headers = { origin: house.server.url, 'idempotency-key': `${name('key')}-${Math.random()}` };
-      const answer = await foreman.context.request.post(url(path), { data, headers });
-      expect(answer.ok(), await answer.text()).toBe(true);
-      return (await answer.json()) as T;
-    };
+    const send = (path: string, data: object) =>
+      foreman.context.request.post(url(path), {
+        data,
+        headers: { origin: house.server.url, 'idempotency-key': randomUUID() },
+      });
     const plan = () => read<BenchPlanDto>('/bench-plan');
     const rowOf = async () => (await plan()).queue.find(({ title }) => title === queued)!;
     const placesOf = async () => read<MovePlacesDto>(`/bench-plan/places?chargeId=${(await rowOf()).chargeId}`);
@@ -130,8 +119,6 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
       await button(panel, 'A quarter hour later').click();
       // Somebody else moves it first.
       const row = await rowOf();
-      const { places } = await placesOf();
-      const place = places.find(({ soonest }) => soonest !== null)!;
       await page.route('**/api/bench-plan/move', async (route) => {
         const body = route.request().postDataJSON() as { rev: number };
         await route.continue({ postData: JSON.stringify({ ...body, rev: row.rev - 1 }) });
@@ -139,19 +126,18 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
       foreman.problems.length = 0;
       await move.click();
       await panel.getByRole('alert').waitFor();
-      expect(await panel.getByRole('alert').innerText()).toMatch(/plan beside shows what is there now/);
+      expect(await panel.getByRole('alert').innerText()).toMatch(/The plan shows what is there now/);
       await page.unroute('**/api/bench-plan/move');
       // The browser's own line about the 412 is expected; nothing else is.
       expect(foreman.problems.filter((line) => !/status of 412/.test(line))).toEqual([]);
       foreman.problems.length = 0;
-      expect(place).toBeTruthy();
       await button(panel, 'Leave it where it is').click();
     });
 
     test('gives a piece of work that fits a wait, and it stands in the lane of the person', async () => {
       const { page } = foreman;
       const title = `Wiper blades ${size}`;
-      await post('/work', {
+      const added = await send('/work', {
         title,
         likelyMinutes: 10,
         longMinutes: 12,
@@ -163,6 +149,7 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
         splittable: false,
         note: null,
       });
+      expect(added.status(), await added.text()).toBe(201);
       // It comes by the socket: nothing is loaded again.
       const give = page
         .getByRole('button', { name: new RegExp(`^(Give|Take it:) ?${title}`) })
@@ -186,22 +173,26 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
 
     test('compares a better plan with today’s, and takes it', async () => {
       const { page } = foreman;
-      const row = await rowOf();
+      const { chargeId } = await rowOf();
       const { rev, places } = await placesOf();
-      const place = places.find(({ soonest }) => soonest !== null)!;
-      // Three hours for nothing: all would be ready later than they need be.
-      const late = new Date(Date.parse(place.soonest!.clipOnAt) + 3 * 3_600_000).toISOString();
-      await post<BenchChangeDto>('/bench-plan/move', {
-        chargeId: row.chargeId,
-        rev,
-        channelId: place.channelId,
-        clipOnAt: late,
-      });
+      const { channelId, soonest } = places.find((place) => place.soonest !== null)!;
+      // Hours for nothing: it would be ready later than it need be. As late as somebody is still there to look in.
+      let late = 0;
+      const read = page.waitForResponse(/bench-plan\/proposal/);
+      for (const hours of [3, 2, 1]) {
+        const clipOnAt = new Date(Date.parse(soonest!.clipOnAt) + hours * 3_600_000).toISOString();
+        const answer = await send('/bench-plan/move', { chargeId, rev, channelId, clipOnAt });
+        if (!answer.ok()) continue;
+        late = Date.parse(clipOnAt);
+        break;
+      }
+      expect(late).toBeGreaterThan(0);
+      await read;
       const better = page.getByRole('region', { name: 'A better plan' });
       await better.waitFor();
       await judge(foreman, name('better'));
       await button(better, 'Take this plan').click();
-      await expect.poll(async () => Date.parse((await rowOf()).clipOnAt), patience).toBeLessThan(Date.parse(late));
+      await expect.poll(async () => Date.parse((await rowOf()).clipOnAt), patience).toBeLessThan(late);
       await expect.poll(() => better.count(), patience).toBe(0);
     });
 
@@ -227,8 +218,9 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
       await button(page, 'Show tomorrow').click();
       await expect.poll(() => page.url(), patience).toMatch(/day=\d{4}/);
       await button(page, 'Today').click();
-      await charge(page).waitFor();
-      await field(page, 'Whose wait').or(heading(page, 'Queue')).first().waitFor();
+      // Something of today stands in its lanes again: by night the queued charge has gone to tomorrow.
+      await page.locator('[data-charge]').locator('visible=true').first().waitFor();
+      expect(page.url()).not.toMatch(/day=\d{4}/);
       expect(foreman.problems).toEqual([]);
     });
 

@@ -80,6 +80,7 @@ export async function launch({ demo = true, env = {}, dataDir, port: wished }: L
       BIDEWELL_DATA: folder,
       BIDEWELL_DEMO: demo ? 'on' : 'off',
       BIDEWELL_LOG: 'info',
+      BIDEWELL_BACKUP_HOURS: '0',
       ...env,
     },
   });

@@ -20,7 +20,9 @@ import type { LiveEvent, LiveHub } from '@/server/live/hub';
 import { makeBenchSolver } from '@/server/services/bench-plan/bench-solver';
 import { solveTask } from '@/server/services/bench-plan/solve';
 import { signAccessToken } from '@/server/services/access-token';
+import { makeBackups } from '@/server/services/backups';
 import { makeLimits, type LimitName, type LimitRule } from '@/server/services/limits';
+import { makeMetrics } from '@/server/services/metrics';
 import type { Passwords } from '@/server/services/passwords';
 import { secretsFrom } from '@/server/services/secrets';
 import { defaultSettings } from '@/server/services/workshop-defaults';
@@ -65,6 +67,7 @@ export function makeRecordingHub(): RecordingHub {
     of: (event) => told.filter((entry) => entry.event === event).map((entry) => entry.payload),
     toWorkshop: (workshopId, event, payload) => void told.push({ workshopId, event, payload }),
     toPerson: (workshopId, personId, event, payload) => void told.push({ workshopId, personId, event, payload }),
+    connected: () => 0,
     end: (target, reason) => void told.push({ event: 'end', payload: { ...target, reason } }),
   };
 }
@@ -142,6 +145,9 @@ let folders = 0;
 /** A data folder of its own for every server; made with the first file that goes there, removed when it closes. */
 const newDataDir = (): string => path.join(os.tmpdir(), `bidewell-test-${process.pid}-${(folders += 1)}`);
 
+/** One for all servers of a test file: it watches the process, of which there is one. */
+const metrics = makeMetrics('test');
+
 const testConfig: Omit<Config, 'dataDir'> = {
   port: 0,
   host: '127.0.0.1',
@@ -152,6 +158,8 @@ const testConfig: Omit<Config, 'dataDir'> = {
   publicUrl: null,
   logLevel: 'silent',
   metroPort: null,
+  backupHours: 0,
+  metricsToken: null,
 };
 
 async function addWorkshop(deps: Deps, name: 'own' | 'other', now: number): Promise<TestWorkshop> {
@@ -234,12 +242,14 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     log: makeLog('silent'),
     hub,
     sleeper: { poke: () => {} },
-    lifecycle: { ready: true },
+    lifecycle: { ready: true, startedAt: clock.now() },
     passwords,
     // The same reckoning, on this thread: what the thread itself does has tests of its own.
     bench: makeBenchSolver({ run: async (task) => solveTask(task), close: async () => {} }),
     secrets: secretsFrom(Buffer.alloc(32, 7)),
     limits: makeLimits(options.limits),
+    backups: makeBackups({ dataDir, everyHours: 0, clock, log: makeLog('silent') }),
+    metrics,
     ...options.deps,
   };
   const none = { id: '', people: {} as TestWorkshop['people'] };

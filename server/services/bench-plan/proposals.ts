@@ -62,7 +62,8 @@ export async function betterPlan(model: BenchModel, solver: BenchSolver): Promis
     const stands = present.get(idOf(movable))!;
     // Against what is written on the plan: what is pushed aside gets its new time with it.
     if (isSamePlace(movable.present, at)) stay.push(movable);
-    else moves.push({ movable, now: stands, then: at });
+    // One that only gets the time it will come to anyway is told against what is written.
+    else moves.push({ movable, now: isSamePlace(stands, at) ? movable.present : stands, then: at });
   }
   if (moves.length === 0) return null;
   moves.sort((a, b) => a.then.at - b.then.at);

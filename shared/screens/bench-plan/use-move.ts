@@ -125,8 +125,8 @@ export function useMove(
     ghost: subject?.charge && candidate && placed && other ? ghostOf(subject.charge, candidate, placed) : null,
     busy: write.isPending,
     problem: write.isError
-      ? isConflict(write.error)
-        ? `${sentenceOf(write.error)} The plan beside shows what is there now.`
+      ? isConflict(write.error) && write.error.status === 412
+        ? `${sentenceOf(write.error)} The plan shows what is there now: look again, then decide.`
         : sentenceOf(write.error)
       : null,
     pick: (chargeId: string) => {

@@ -10,6 +10,7 @@ import type { PartProps } from './part-props';
 import { PeoplePart } from './people-part';
 import { PlacesPart } from './places-part';
 import { ResistorsPart } from './resistors-part';
+import { ServerPart } from './server-part';
 import { SkillsPart } from './skills-part';
 import { StaffingPart } from './staffing-part';
 import { WallsPart } from './walls-part';
@@ -28,4 +29,5 @@ export const workshopParts: Record<SectionKey, (props: PartProps) => ReactNode> 
   limits: LimitsPart,
   hours: HoursPart,
   walls: WallsPart,
+  server: ServerPart,
 };

@@ -79,9 +79,9 @@ export function nextFreeWords(channels: readonly PlanChannelDto[], now: number, 
   return `next free channel ${soonest.name}, ${freeWords(soonest.freeAt, now, wording)}`;
 }
 
-/** 'now', or when: '17:25'. */
+/** 'now', or when: '17:25'. The clock of the screen goes by minutes. */
 export const freeWords = (freeAt: string, now: number, { zone, marks }: Wording): string =>
-  Date.parse(freeAt) <= now ? 'now' : moment(Date.parse(freeAt), zone, now, marks);
+  Date.parse(freeAt) < now + 60_000 ? 'now' : moment(Date.parse(freeAt), zone, now, marks);
 
 /** 'ready 17:05 (16:40–18:05), due 18:15' */
 export function readyWords(

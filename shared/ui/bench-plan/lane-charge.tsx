@@ -150,7 +150,8 @@ export function LookInHead({
 }
 
 const useStyles = makeStyles((theme) => ({
-  item: { position: 'static' },
+  // Of no layer of its own: the line of now passes between its silhouette and its name.
+  item: { position: 'static', zIndex: 'auto' as unknown as number },
   ribbon: { position: 'absolute', left: 0, top: silhouette.top, pointerEvents: 'none' },
   dim: { opacity: 0.5 },
   label: {

@@ -55,13 +55,14 @@ export function onChannel(places: MovePlacesDto, channelId: string, clipOn: numb
   return soonest && { channelId, clipOn: Math.max(clipOn, Date.parse(soonest.clipOnAt)) };
 }
 
-/** To the next or the last full quarter hour; never before the soonest on that channel. */
+/** To the next or the last full quarter hour; never before the soonest on that channel, which the first step leads to. */
 export function stepTime(candidate: Candidate, places: MovePlacesDto, step: 1 | -1): Candidate {
   const soonest = soonestOn(places, candidate.channelId);
   const quarters = candidate.clipOn / quarterMs;
   const wanted = (step === 1 ? Math.floor(quarters) + 1 : Math.ceil(quarters) - 1) * quarterMs;
   const earliest = soonest ? Date.parse(soonest.clipOnAt) : candidate.clipOn;
-  return { ...candidate, clipOn: Math.max(wanted, Math.min(earliest, candidate.clipOn)) };
+  if (step === -1 && candidate.clipOn <= earliest) return candidate;
+  return { ...candidate, clipOn: Math.max(wanted, earliest) };
 }
 
 /** To the next channel, down or up, on which it can be done; stays where there is none. */

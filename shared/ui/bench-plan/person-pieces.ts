@@ -8,8 +8,8 @@ import type { Wording } from './charge-words';
 import { toX, type PlanAxis } from './plan-axis';
 
 /** px from which a free stretch says 'free' behind its minutes, and from which it says the minutes. */
-const freeWordRoom = 96;
-const freeMinutesRoom = 44;
+const freeWordRoom = 100;
+const freeMinutesRoom = 48;
 /** Narrower than this a free stretch is no target of its own: it is in the list beside. */
 const targetRoom = 48;
 

@@ -1,8 +1,7 @@
 /** The one time axis under all lanes of the bench plan. Instants are epoch ms, places px. */
 import type { BenchPlanDto } from '@/shared/contract/bench-plan';
 import { instantOfDay } from '../format/zone';
-import { clockTicks, type Tick } from '../wait-ribbon/ticks';
-import { tickAnchor } from '../wait-ribbon/time-axis';
+import { clockTicks, tickAnchor, type Tick } from '../wait-ribbon/ticks';
 import type { LocaleMarks } from '../format/marks';
 
 export interface PlanAxis {

@@ -46,7 +46,7 @@ export function ProposalPart({
           A better plan
         </Txt>
         <Txt kind="small" tone="ink2">
-          {proposal.proved ? 'the best there is' : 'the best found so far'}
+          {proposal.proved ? 'the best there is' : 'the best found in time'}
         </Txt>
       </View>
       <Txt>{proposal.because}</Txt>
@@ -106,7 +106,7 @@ function Move({ move, now }: { move: ProposedMoveDto; now: number }) {
         {move.text}
       </Txt>
       <Txt kind="small" tone="ink2">
-        {`${then} instead of ${before}`}
+        {then === before ? `${then}, where it would end up anyway` : `${then} instead of ${before}`}
       </Txt>
     </View>
   );

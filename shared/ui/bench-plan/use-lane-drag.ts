@@ -80,6 +80,8 @@ export function useLaneDrag({
       drag.current = null;
       if (!one?.moving) return;
       dropped.current = true;
+      // The click of this press comes before any timer.
+      setTimeout(() => (dropped.current = false), 0);
       if (one.last) onDrop(one.chargeId, one.last);
     },
     cancel: () => {

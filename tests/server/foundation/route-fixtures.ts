@@ -59,6 +59,10 @@ const meter = { name: 'One more', offsetMillivolts: '1', checkedAt: null };
 export const routeFixtures: Record<string, RouteFixture> = {
   'GET /healthz': { who: 'anyone' },
   'GET /readyz': { who: 'anyone' },
+  'GET /metrics': { who: 'anyone', anyoneHears: 404 },
+  'GET /api/status': manager(),
+  'POST /api/status/backup': manager(),
+  'GET /api/export.zip': manager(),
 
   'GET /api/front-door': { who: 'anyone' },
   'POST /api/session': {

@@ -19,6 +19,7 @@ const sleeper = makeSleeper({
       if (event === 'alert:raised') process.stdout.write(`told ${(payload as { id: string }).id}\n`);
     },
     toPerson: () => {},
+    connected: () => 0,
     end: () => {},
   },
 });

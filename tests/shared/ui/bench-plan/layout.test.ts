@@ -3,6 +3,7 @@ import { labelWidth, placeLabels } from '@/shared/ui/bench-plan/lane-labels';
 import { lanePieces, packRows, queueDots } from '@/shared/ui/bench-plan/lane-pieces';
 import { personDocks, personPegs } from '@/shared/ui/bench-plan/person-pieces';
 import { axisTicks, dayAxis, flagWidth, flagX, nowX, toInstant, toX } from '@/shared/ui/bench-plan/plan-axis';
+import { tickAnchor } from '@/shared/ui/wait-ribbon/ticks';
 import { at, charges, iso, now, people, plan, planned, zone } from '../../../app/bench-plan/plan-of';
 
 const h24 = { decimal: '.', hour12: false } as const;
@@ -61,8 +62,11 @@ describe('the axis of a day', () => {
       for (let instant = at('08:00'); instant <= at('18:30'); instant += 7 * 60_000) {
         const flag = flagX(narrow, instant, marks);
         const words = axisTicks(narrow, zone, marks, instant).filter(({ quiet }) => !quiet);
-        // A word stands in the middle under its tick, but inside the ends of the axis.
-        const lefts = words.map(({ x }) => Math.max(0, Math.min(width - 2 * half, x - half)));
+        // Where the axis draws them: in the middle under the tick, and pushed inside at its ends.
+        const lefts = words.map(({ x }) => {
+          const anchor = tickAnchor(x, width, true);
+          return anchor === 'start' ? x : anchor === 'end' ? x - 2 * half : x - half;
+        });
         for (const left of lefts) expect(left + 2 * half <= flag || left >= flag + flagWidth(marks)).toBe(true);
         for (let i = 1; i < lefts.length; i++) expect(lefts[i]! - lefts[i - 1]!).toBeGreaterThanOrEqual(2 * half);
         expect(flag).toBeGreaterThanOrEqual(0);
@@ -149,8 +153,14 @@ describe('the labels of a lane', () => {
 
   it('go right of a look-in that stands over their begin', () => {
     const { labels, hidden } = placeLabels([{ x: 100, title: 'R-2411', tag: null }], [110], 872);
-    expect(labels[0]!.x).toBe(120);
+    expect(labels[0]!.x).toBe(122);
     expect(hidden).toEqual([]);
+  });
+
+  it('stay at their silhouettes where look-ins stand too close together: the one in the way is left out', () => {
+    // Hours of 57 px, as on a tablet: 33 px between two look-ins, and a name of 45.
+    const { labels, hidden } = placeLabels([{ x: 100, title: 'R-2411', tag: null }], [112, 169, 226], 600);
+    expect([labels[0]!.x, hidden]).toEqual([100, [112]]);
   });
 
   it('of 300 random lanes never stand over each other, over a look-in that is drawn, or beyond the lane', () => {

@@ -12,7 +12,8 @@ import {
   stepTime,
   subjectOf,
 } from '@/shared/ui/bench-plan/move-candidate';
-import { at, charges, iso, places, plan } from '../../../app/bench-plan/plan-of';
+import { places } from '../../../app/bench-plan/answers-of';
+import { at, charges, iso, plan } from '../../../app/bench-plan/plan-of';
 
 const r2421 = charges.find(({ card }) => card.title === 'R-2421')!;
 const stands = standsAt(r2421)!;
@@ -29,6 +30,12 @@ describe('a charge that is moved', () => {
     let earlier = stands;
     for (let i = 0; i < 9; i++) earlier = stepTime(earlier, places, -1);
     expect(earlier.clipOn).toBe(at('14:00'));
+  });
+
+  it('that stands where it cannot begin any more goes later to the soonest, and not earlier', () => {
+    const missed = { channelId: 'a1', clipOn: at('13:30') };
+    expect(stepTime(missed, places, 1).clipOn).toBe(at('14:00'));
+    expect(stepTime(missed, places, -1)).toBe(missed);
   });
 
   it('comes back to full quarters from a time between them', () => {

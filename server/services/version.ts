@@ -1,0 +1,4 @@
+import packageJson from '../../package.json';
+
+/** Version of the program. */
+export const { version } = packageJson;
