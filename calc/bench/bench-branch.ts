@@ -1,6 +1,6 @@
 import { firstStart, type BenchModel } from './bench-model';
 import { compareScores, SAME_S, type BenchScore } from './bench-score';
-import type { ScoredOrder } from './bench-search';
+import type { ScoredOrder } from './bench-order';
 import type { SearchBudget } from './search-budget';
 
 /** So many jobs at most are searched through: their sets are counted in the bits of a number. */

@@ -1,4 +1,4 @@
-import { firstStart, type BenchModel } from './bench-model';
+import { firstStart, secondsOver, type BenchModel } from './bench-model';
 import { SAME_S, type BenchScore } from './bench-score';
 
 /** A plan as a search turns it over: the jobs in an order, each with one of its alternatives. */
@@ -45,6 +45,7 @@ export function benchDecoder(model: BenchModel): BenchDecoder {
         for (let h = firstHeld[way]!; h < end; h += 1) free[held[h]!] = start + busy[way]!;
         const over = start + guard[way]! - due[job]!;
         if (over > 0) late += weight[job]! * over;
+        if (model.overPrice > 0) late += model.overPrice * secondsOver(model, way, start);
         makespan = Math.max(makespan, start + ready[way]!);
         sum += start;
       }

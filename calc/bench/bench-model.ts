@@ -24,18 +24,26 @@ export interface BenchModel {
   firstWindow: Int32Array;
   windowFrom: Float64Array;
   windowTo: Float64Array;
+  /** What a second costs by which a start is after the stretch it may start in; 0: no start is. */
+  overPrice: number;
+  /** 1: a window after a stretch, in which starts cost so much more. */
+  isOver: Uint8Array;
   /** Ids of the jobs left out, because no channel can ever carry them out. */
   unplaced: string[];
 }
 
-/** Brings a checked problem down to arrays. */
-export function benchModel({ taken, jobs }: BenchProblem): BenchModel {
-  const kept: { job: number; alternatives: { at: number; one: BenchAlternative; starts: Stretch[] }[] }[] = [];
+/**
+ * Brings a checked problem down to arrays.
+ *
+ * @param over lets starts be so much after their stretches, at that price a second; the alternatives stay the same ones
+ */
+export function benchModel({ taken, jobs }: BenchProblem, over = { byS: 0, price: 0 }): BenchModel {
+  const kept: { job: number; alternatives: { at: number; one: BenchAlternative; starts: StartWindow[] }[] }[] = [];
   const unplaced: string[] = [];
   jobs.forEach(({ id, alternatives }, job) => {
     const usable = alternatives
-      .map((one, at) => ({ at, one, starts: startsOf(one, taken) }))
-      .filter(({ starts }) => starts.length > 0);
+      .map((one, at) => ({ at, one, starts: startsOf(one, taken, over.byS) }))
+      .filter(({ starts }) => starts.some(({ isOver }) => !isOver));
     if (usable.length > 0) kept.push({ job, alternatives: usable });
     else unplaced.push(id);
   });
@@ -55,6 +63,8 @@ export function benchModel({ taken, jobs }: BenchProblem): BenchModel {
     firstWindow: offsets(all.map(({ starts }) => starts.length)),
     windowFrom: Float64Array.from(all.flatMap(({ starts }) => starts.map(({ fromS }) => fromS))),
     windowTo: Float64Array.from(all.flatMap(({ starts }) => starts.map(({ toS }) => toS))),
+    overPrice: over.price,
+    isOver: Uint8Array.from(all.flatMap(({ starts }) => starts.map(({ isOver }) => Number(isOver)))),
     unplaced,
   };
 }
@@ -67,18 +77,37 @@ export function firstStart(model: BenchModel, alternative: number, fromS: number
   return Infinity;
 }
 
+interface StartWindow extends Stretch {
+  isOver: boolean;
+}
+
 /** When an alternative may start, from now on: a stretch may be a single instant, where a gap is just long enough. */
-function startsOf({ channels, busyS, mayStart }: BenchAlternative, taken: readonly Stretch[][]): Stretch[] {
-  let starts = mayStart.filter(({ toS }) => toS >= 0).map(({ fromS, toS }) => ({ fromS: Math.max(0, fromS), toS }));
+function startsOf(
+  { channels, busyS, mayStart }: BenchAlternative,
+  taken: readonly Stretch[][],
+  overS: number,
+): StartWindow[] {
+  let starts = mayStart.flatMap(({ fromS, toS }, at): StartWindow[] => {
+    const over = Math.min(toS + overS, mayStart[at + 1]?.fromS ?? Infinity);
+    return [{ fromS, toS, isOver: false }, ...(over > toS ? [{ fromS: toS, toS: over, isOver: true }] : [])];
+  });
+  starts = starts.filter(({ toS }) => toS >= 0).map((one) => ({ ...one, fromS: Math.max(0, one.fromS) }));
   for (const channel of channels)
     for (const hole of taken[channel]!)
-      starts = starts.flatMap(({ fromS, toS }) =>
+      starts = starts.flatMap((one) =>
         [
-          { fromS, toS: Math.min(toS, hole.fromS - busyS) },
-          { fromS: Math.max(fromS, hole.toS), toS },
+          { ...one, toS: Math.min(one.toS, hole.fromS - busyS) },
+          { ...one, fromS: Math.max(one.fromS, hole.toS) },
         ].filter((left) => left.fromS <= left.toS),
       );
   return starts;
+}
+
+/** By how much the start is after the stretch it may start in, s. */
+export function secondsOver(model: BenchModel, alternative: number, startS: number): number {
+  for (let at = model.firstWindow[alternative]!; model.windowFrom[at]! <= startS; at += 1)
+    if (startS <= model.windowTo[at]!) return model.isOver[at] ? startS - model.windowFrom[at]! : 0;
+  return 0;
 }
 
 function offsets(lengths: readonly number[]): Int32Array {

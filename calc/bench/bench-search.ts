@@ -1,18 +1,8 @@
 import { benchDecoder, type BenchOrder } from './bench-decode';
+import { copyOfOrder, moveTo, shareChannels, twins, type ScoredOrder } from './bench-order';
 import type { BenchModel } from './bench-model';
 import { compareScores, type BenchScore } from './bench-score';
 import type { SearchBudget } from './search-budget';
-
-/** An order with what it is worth. */
-export interface ScoredOrder extends BenchOrder {
-  score: BenchScore;
-}
-
-const copyOf = ({ order, alternative, score }: ScoredOrder): ScoredOrder => ({
-  order: order.slice(),
-  alternative: alternative.slice(),
-  score: { ...score },
-});
 
 /**
  * The best order that moves and swaps reach from the one given: a descent until no single move of a job (to any
@@ -28,8 +18,8 @@ export function searchOrders(
 ): ScoredOrder {
   const decoder = benchDecoder(model);
   decoder.read(from, null);
-  let current: ScoredOrder = copyOf({ ...from, score: decoder.score });
-  let best = copyOf(current);
+  let current: ScoredOrder = copyOfOrder({ ...from, score: decoder.score });
+  let best = copyOfOrder(current);
   const tryOrder = (order: Int32Array, alternative: Int32Array, than: BenchScore): boolean =>
     budget.spend() && decoder.read({ order, alternative }, than) && compareScores(decoder.score, than) < 0;
   const descend = descent(model, (order, alternative, than) =>
@@ -39,13 +29,13 @@ export function searchOrders(
   for (;;) {
     descend(current, random);
     if (compareScores(current.score, best.score) < 0) {
-      best = copyOf(current);
+      best = copyOfOrder(current);
       fruitless = 0;
     } else fruitless += 1;
     if (budget.over() || isBest(best.score) || best.order.length < 2) return best;
     // A walk that has found nothing for long begins again at the best.
     const worse = compareScores(current.score, best.score) > 0;
-    if (worse && (fruitless % 12 === 0 || random() < 0.25)) current = copyOf(best);
+    if (worse && (fruitless % 12 === 0 || random() < 0.25)) current = copyOfOrder(best);
     kick(model, current, random, 2 + Math.floor(random() * 4));
     decoder.read(current, null);
     current.score = { ...decoder.score };
@@ -61,9 +51,7 @@ function kick(model: BenchModel, { order, alternative }: BenchOrder, random: () 
     const first = model.firstAlternative[job]!;
     alternative[job] = first + draw(model.firstAlternative[job + 1]! - first);
     const to = draw(order.length);
-    if (to < at) order.copyWithin(to + 1, to, at);
-    else order.copyWithin(at, at + 1, to + 1);
-    order[to] = job;
+    moveTo(order, at, to);
   }
 }
 
@@ -72,7 +60,7 @@ type Attempt = (order: Int32Array, alternative: Int32Array, than: BenchScore) =>
 /** Lowers an order in place until neither a move nor a swap makes it better. */
 function descent(model: BenchModel, attempt: Attempt): (plan: ScoredOrder, random: () => number) => void {
   const jobs = model.source.length;
-  const shares = sharedChannels(model);
+  const shares = shareChannels(model);
   const twin = twins(model);
   const tried = new Int32Array(jobs);
   const found = new Int32Array(jobs);
@@ -147,28 +135,4 @@ function shuffle(list: Int32Array, random: () => number): void {
     const to = Math.floor(random() * (at + 1));
     [list[at], list[to]] = [list[to]!, list[at]!];
   }
-}
-
-/** Whether two alternatives have a channel in common. */
-function sharedChannels({ busy, firstHeld, held }: BenchModel): (one: number, other: number) => boolean {
-  const ways = busy.length;
-  const common = new Uint8Array(ways * ways);
-  const channels = Array.from({ length: ways }, (_, way) => held.subarray(firstHeld[way]!, firstHeld[way + 1]!));
-  for (let one = 0; one < ways; one += 1)
-    for (let other = 0; other < ways; other += 1)
-      if (channels[one]!.some((channel) => channels[other]!.includes(channel))) common[one * ways + other] = 1;
-  return (one, other) => common[one * ways + other] === 1;
-}
-
-/** The alternative of a job that holds the channels of another job's; −1: it has none. */
-function twins({ source, busy, firstHeld, held, firstAlternative }: BenchModel): (job: number, of: number) => number {
-  const key = (way: number) => [...held.subarray(firstHeld[way]!, firstHeld[way + 1]!)].sort((a, b) => a - b).join();
-  const keys = Array.from(busy, (_, way) => key(way));
-  const ways = busy.length;
-  const known = new Int32Array(source.length * ways).fill(-1);
-  for (let job = 0; job < source.length; job += 1)
-    for (let of = 0; of < ways; of += 1)
-      for (let way = firstAlternative[job]!; way < firstAlternative[job + 1]!; way += 1)
-        if (keys[way] === keys[of]) known[job * ways + of] = way;
-  return (job, of) => known[job * ways + of]!;
 }

@@ -1,4 +1,4 @@
-import { readFills, type FillOrder } from './fill-decode';
+import { fillReader, type FillOrder } from './fill-decode';
 import type { FillModel } from './fill-model';
 import type { SearchBudget } from './search-budget';
 
@@ -23,7 +23,8 @@ export function searchFills(
   bound: number,
 ): ScoredFills {
   const copyOf = ({ order, wish, worth }: ScoredFills) => ({ order: order.slice(), wish: wish.slice(), worth });
-  let current: ScoredFills = { ...from, worth: readFills(model, from).worth };
+  const reader = fillReader(model);
+  let current: ScoredFills = { ...from, worth: reader.read(from) };
   let best = copyOf(current);
   const pieces = model.pieces.length;
   if (pieces === 0) return best;
@@ -35,7 +36,7 @@ export function searchFills(
     const heat = hot * (1 - along) ** 2;
     const next = { order: current.order.slice(), wish: current.wish.slice() };
     step(model, next, random);
-    const { worth } = readFills(model, next);
+    const worth = reader.read(next);
     if (worth < current.worth && random() >= Math.exp((worth - current.worth) / heat)) continue;
     current = { ...next, worth };
     if (worth > best.worth * (1 + SAME_WORTH)) best = copyOf(current);

@@ -1,13 +1,16 @@
 import type { BenchProblem, BenchSolution, SolveLimits } from './bench-types';
-import { eachAlone } from './bench-bound';
+import { eachAlone, priceBound } from './bench-bound';
 import { branchAndBound, MOST_BRANCHED } from './bench-branch';
 import { benchDecoder, type BenchOrder } from './bench-decode';
 import { earliestDueOrder } from './bench-earliest-due';
+import { searchThroughEvenings } from './bench-evenings';
 import { benchModel, type BenchModel } from './bench-model';
-import { SAME_S } from './bench-score';
+import type { ScoredOrder } from './bench-order';
+import { benchPrices } from './bench-prices';
+import { SAME_S, type BenchScore } from './bench-score';
 import { searchOrders } from './bench-search';
 import { checkBench } from './check-bench';
-import { searchBudget } from './search-budget';
+import { budgetPart, searchBudget, type SearchBudget } from './search-budget';
 import { seededRandom } from '../statistics/seeded-random';
 
 const USUAL_NODES = 600_000;
@@ -27,20 +30,55 @@ export function planBench(problem: BenchProblem, limits: SolveLimits = {}): Benc
   checkBench(problem);
   const model = benchModel(problem);
   const budget = searchBudget(limits, USUAL_NODES);
-  const random = seededRandom(1);
   const least = eachAlone(model);
-  const isBest = (score: { unplaced: number; lateS: number; makespanS: number }) =>
-    score.unplaced === 0 && score.lateS <= least.lateS + SAME_S && score.makespanS <= least.makespanS + SAME_S;
   const first = earliestDueOrder(model);
-  if (model.source.length > MOST_BRANCHED) {
-    const found = searchOrders(model, first, budget, random, isBest);
-    return solution(problem, model, found, least.lateS, isBest(found.score));
+  const near = searchMany(problem, model, first, budgetPart(budget, FIRST_NODES), least);
+  let from = near;
+  if (model.source.length <= MOST_BRANCHED) {
+    const { best, complete } = branchAndBound(model, near, budget);
+    if (complete) return solution(problem, model, best, best.score.lateS, true);
+    from = best;
   }
-  const quick = searchBudget({ ...limits, maxNodes: Math.min(FIRST_NODES, limits.maxNodes ?? FIRST_NODES) }, 0);
-  const near = searchOrders(model, first, quick, random, isBest);
-  const { best, complete } = branchAndBound(model, near, budget);
-  const found = complete ? best : searchOrders(model, best, budget, random, isBest);
-  return solution(problem, model, found, complete ? found.score.lateS : least.lateS, complete || isBest(found.score));
+  const boundS = lateBound(problem, model, from.score, budget, least);
+  const { order, alternative, score } = searchMany(problem, model, from, budget, least);
+  const proved = score.unplaced === 0 && score.lateS <= boundS + SAME_S && score.makespanS <= least.makespanS + SAME_S;
+  return solution(problem, model, { order, alternative }, boundS, proved);
+}
+
+type Least = ReturnType<typeof eachAlone>;
+
+/** Nothing can be better: all have a place, and neither lateness nor makespan is more than that of each job alone. */
+const isLeast = ({ unplaced, lateS, makespanS }: BenchScore, least: Least): boolean =>
+  unplaced === 0 && lateS <= least.lateS + SAME_S && makespanS <= least.makespanS + SAME_S;
+
+/** The local search that fits the problem: evenings matter where starts end some time and lateness counts. */
+function searchMany(
+  problem: BenchProblem,
+  model: BenchModel,
+  from: BenchOrder,
+  budget: SearchBudget,
+  least: Least,
+): ScoredOrder {
+  const random = seededRandom(1);
+  const isBest = (score: BenchScore) => isLeast(score, least);
+  const evenings =
+    model.source.length > 1 && model.windowTo.some((end) => end < Infinity) && model.weight.some((one) => one > 0);
+  return evenings
+    ? searchThroughEvenings(problem, model, from, budget, random, isBest)
+    : searchOrders(model, from, budget, random, isBest);
+}
+
+/** A weighted tardiness that no plan goes under that leaves no job out, s. */
+function lateBound(
+  { taken }: BenchProblem,
+  model: BenchModel,
+  { unplaced, lateS, makespanS }: BenchScore,
+  budget: SearchBudget,
+  least: Least,
+): number {
+  if (unplaced > 0 || lateS <= least.lateS + SAME_S) return least.lateS;
+  const prices = benchPrices(model, taken, makespanS * 1.1);
+  return Math.max(least.lateS, priceBound(model, prices, lateS, budget));
 }
 
 /**

@@ -1,7 +1,7 @@
 import type { FillProblem, FillSolution, SolveLimits } from './bench-types';
 import { checkFills } from './check-fills';
 import { fillBound } from './fill-bound';
-import { readFills } from './fill-decode';
+import { fillReader } from './fill-decode';
 import { exactFills, onlyLengthsCount } from './fill-exact';
 import { fillModel, worthPerSecond } from './fill-model';
 import { SAME_WORTH, searchFills, type ScoredFills } from './fill-search';
@@ -31,17 +31,19 @@ export function planFills(problem: FillProblem, limits: SolveLimits = {}): FillS
     (one, other) => model.pieces[other]!.perSecond - model.pieces[one]!.perSecond,
   );
   let best: ScoredFills = { order: dense, wish: new Int32Array(dense.length).fill(-1), worth: 0 };
-  best.worth = readFills(model, best).worth;
+  const reader = fillReader(model);
+  best.worth = reader.read(best);
   let complete = false;
   if (onlyLengthsCount(model)) {
     const most = searchBudget({ ...limits, maxNodes: nodes * EXACT_NODES_EACH }, 0);
     const exact = exactFills(model, best.worth, most);
     complete = exact.complete;
-    if (exact.found) best = { ...exact.found, worth: readFills(model, exact.found).worth };
+    if (exact.found) best = { ...exact.found, worth: reader.read(exact.found) };
   }
   const walked = Math.min(nodes, USUAL_NODES);
   if (!complete) best = searchFills(model, best, budget, walked, seededRandom(1), bound);
-  const { parts, worth } = readFills(model, best);
+  const worth = reader.read(best);
+  const { parts } = reader;
   const proved = complete || worth >= bound * (1 - SAME_WORTH);
   return {
     placements: parts

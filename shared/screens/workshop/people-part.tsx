@@ -69,7 +69,10 @@ export function PeoplePart({ titled }: PartProps) {
           <PeopleTable
             people={found.flatMap(({ person }) => person ?? [])}
             skillsOf={(id) =>
-              skillNames(staffing?.people.find(({ person }) => person.id === id)?.skillIds ?? [], staffing?.skills ?? [])
+              skillNames(
+                staffing?.people.find(({ person }) => person.id === id)?.skillIds ?? [],
+                staffing?.skills ?? [],
+              )
             }
             invitations={found.flatMap(({ invitation }) => invitation ?? [])}
             now={now}

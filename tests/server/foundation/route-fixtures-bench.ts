@@ -1,9 +1,10 @@
-/** Part of route-fixtures.ts: hours, skills, places and other work. */
+/** Part of route-fixtures.ts: hours, skills, places, other work and the bench plan. */
 import { staffingForm, workForm } from '@/tests/support/benched';
 import type { Furnished } from '@/tests/support/furnished';
 import type { Fit, RouteFixture } from './route-fixtures';
 
 const technician = (fit?: RouteFixture['fit']): RouteFixture => ({ who: 'technician', fit });
+const foreman = (fit?: RouteFixture['fit']): RouteFixture => ({ who: 'foreman', fit });
 const manager = (fit?: RouteFixture['fit']): RouteFixture => ({ who: 'manager', fit });
 
 const work =
@@ -47,4 +48,17 @@ export const benchFixtures: Record<string, RouteFixture> = {
   'POST /api/work/:id/stints/:stintId/give-back': technician(stint()),
   'POST /api/work/:id/drop': technician(work(() => ({ reason: 'Another workshop does it.' }))),
   'POST /api/work/:id/reopen': technician((f) => ({ params: { id: f.bench.droppedWorkId } })),
+
+  'GET /api/bench-plan': foreman(),
+  'GET /api/bench-plan/proposal': foreman(),
+  'GET /api/bench-plan/places': foreman((f) => ({ query: `chargeId=${f.chargeId}` })),
+  'POST /api/bench-plan/accept': foreman(() => ({ body: { proposalId: 'none-of-today' } })),
+  'POST /api/bench-plan/move': foreman((f) => ({
+    body: { chargeId: f.chargeId, rev: f.chargeRev, channelId: f.channelId, clipOnAt: '2026-06-10T08:00:00Z' },
+  })),
+  'POST /api/bench-plan/undo/:id': foreman(() => ({ params: { id: 'no-change' } })),
+  'GET /api/bench-plan/fits': technician(),
+  'GET /api/bench-plan/my-day': technician(),
+  'GET /api/bench-plan/start-now': technician(),
+  'GET /api/bench-plan/day-sheet.pdf': technician(),
 };
