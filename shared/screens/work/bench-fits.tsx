@@ -4,11 +4,10 @@ import { useCan, useMember } from '@/shared/client/session';
 import type { PlanBlockDto } from '@/shared/contract/bench-plan';
 import { moment } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
-import { NBSP } from '@/shared/ui/format/marks';
 import { Link } from '@/shared/ui/primitives/link';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { makeStyles } from '@/shared/ui/theme/make-styles';
-import { fitsTitle, minutesLeft } from '@/shared/ui/work/fit-words';
+import { fitsTitle, freeWords, minutesLeft } from '@/shared/ui/work/fit-words';
 import { FillCard } from './fill-card';
 import { FitList } from './fit-list';
 
@@ -54,7 +53,7 @@ export function BenchFits({
               {fitsTitle(stretch, now, at)}
             </Txt>
             <Txt kind="small" tone="ink2" nowrap>
-              {`${minutesLeft(stretch, now)}${NBSP}min free`}
+              {freeWords(minutesLeft(stretch, now))}
             </Txt>
           </View>
           <FitList stretch={stretch} now={now} most={most} onStale={renew} />

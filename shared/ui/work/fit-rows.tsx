@@ -6,6 +6,7 @@ import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { fitNow, type FitNow } from './fit-now';
 import { fitDetail } from './fit-words';
+import { WorkName } from './work-name';
 import { workTitle } from './work-words';
 
 type Fitting = Extract<FitNow, { fits: true }>;
@@ -50,7 +51,7 @@ export function FitRows({
         {fitting.map(({ fit, as }) => (
           <View key={fit.work.id} role="listitem" style={styles.row}>
             <View style={styles.words}>
-              <Txt bold>{workTitle(fit.work)}</Txt>
+              <WorkName bold work={fit.work} />
               <Txt kind="small" tone="ink2">
                 {fitDetail(fit, as.minutes)}
               </Txt>
@@ -74,7 +75,7 @@ export function FitRows({
         {beside.map(({ fit, as }) => (
           <View key={fit.work.id} role="listitem" style={styles.row}>
             <View style={styles.words}>
-              <Txt tone="ink2">{workTitle(fit.work)}</Txt>
+              <WorkName tone="ink2" work={fit.work} />
               <Txt kind="small" tone="ink2">
                 {`${fit.work.leftLongMinutes}${NBSP}min · ${as.because}`}
               </Txt>

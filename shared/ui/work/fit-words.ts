@@ -1,5 +1,6 @@
 /** What is said of a free stretch and of the work that fits it. Pure; instants are epoch ms. */
 import type { FitDto, FreeStretchDto } from '@/shared/contract/bench-plan';
+import { duration } from '../format/duration';
 import { NBSP } from '../format/marks';
 
 /** 'Fits the wait at 14:55', 'Fits the wait now', 'Fits at 14:55'. @param at writes an instant */
@@ -8,6 +9,10 @@ export function fitsTitle(stretch: Pick<FreeStretchDto, 'from' | 'waitOf'>, now:
   const when = from <= now ? 'now' : `at ${at(from)}`;
   return `Fits ${stretch.waitOf ? 'the wait ' : ''}${when}`;
 }
+
+/** '35 min free'; from three hours on '7 h 00 free'. */
+export const freeWords = (minutes: number): string =>
+  `${minutes < 180 ? `${minutes}${NBSP}min` : duration(minutes * 60, 'minute')} free`;
 
 /** Minutes of a stretch that are still to come. */
 export const minutesLeft = ({ from, to }: Pick<FreeStretchDto, 'from' | 'to'>, now: number): number =>

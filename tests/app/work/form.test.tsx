@@ -79,7 +79,7 @@ describe('quick add of other work', () => {
     await type('Likely', '30');
     await unfold();
     await type('At most, nine times in ten', '20');
-    await type('To be over by', '1630');
+    await type('Due', '1630');
     fireEvent.click(screen.getByRole('radio', { name: 'Urgent' }));
     fireEvent.click(await press('Put it on the list'));
     await screen.findByText('Long is shorter than likely. Type the longer one here.');
