@@ -2,6 +2,7 @@ import { fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { RepairWorkPart } from '@/shared/screens/work/repair-work-part';
 import type { RepairDto } from '@/shared/contract/repair';
+import type { WorkDto } from '@/shared/contract/work';
 import { draw, emptyDevice, problem } from '../charges/bench-of';
 import { bram, brakes, iso, listOf, now, workServer, type WorkServer } from './works';
 
@@ -24,7 +25,7 @@ afterEach(() => vi.unstubAllGlobals());
 
 describe('the other work of a repair', () => {
   it('is listed, the open before what is over, without its number again; more is added for this repair', async () => {
-    const done = { ...brakes, id: 'w3', title: 'Seal the lid', state: 'done', stints: [] } as const;
+    const done: WorkDto = { ...brakes, id: 'w3', title: 'Seal the lid', state: 'done' };
     open('open', {
       [openWork]: () => Response.json(listOf([brakes], 1)),
       [overWork]: () => Response.json(listOf([{ ...done, over: { at: iso('11:00'), by: bram, reason: null } }], 1)),
