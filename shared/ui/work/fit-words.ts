@@ -18,6 +18,12 @@ export const freeWords = (minutes: number): string =>
 export const minutesLeft = ({ from, to }: Pick<FreeStretchDto, 'from' | 'to'>, now: number): number =>
   Math.max(0, Math.floor((Date.parse(to) - Math.max(now, Date.parse(from))) / 60_000));
 
+/** 'Nothing fits the 12 min at 14:10.', 'Nothing fits the 12 min now.' @param at writes an instant */
+export function nothingFits(stretch: Pick<FreeStretchDto, 'from' | 'to'>, now: number, at: (ms: number) => string) {
+  const from = Date.parse(stretch.from);
+  return `Nothing fits the ${minutesLeft(stretch, now)}${NBSP}min ${from <= now ? 'now' : `at ${at(from)}`}.`;
+}
+
 /** '30 min · bay 4 · your skill'; of work that is done in parts '40 min of 60'. */
 export function fitDetail({ work }: Pick<FitDto, 'work'>, minutes: number): string {
   const part = minutes < work.leftLongMinutes ? ` of ${work.leftLongMinutes}` : '';

@@ -74,6 +74,18 @@ describe('the foot of the bench', () => {
     expect(part.getAllByRole('button', { name: /^Take it/ })).toHaveLength(1);
   });
 
+  it('passes over 12 min that nothing fits, says so, and shows the next wait with something in it', async () => {
+    const [short, long] = [free('14:00', '14:12'), free('14:55', '15:30')];
+    const over = fit(brakes, '14:00', '14:30', { span: null, overByMinutes: 18, because: '18 min too long' });
+    const both = fitsOf(short, over);
+    both.people[0]?.stretches.push({ ...long, fits: [fit(brakes, '14:55', '15:25')] });
+    open(both);
+    const part = await foot();
+    await part.findByText('Fits the wait at 14:55');
+    expect(part.getByText(/^Nothing fits the 12\smin at 14:00\.$/)).toBeTruthy();
+    expect(part.getAllByRole('button', { name: /^Take it/ })).toHaveLength(1);
+  });
+
   it('takes it in one tap for 14:55, and gives it back in one from the word that says so', async () => {
     open(fitsOf(wait, fit(brakes, '14:55', '15:25')));
     server.answers['POST /api/work/w1/take'] = () => {
