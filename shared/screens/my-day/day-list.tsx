@@ -13,7 +13,7 @@ import { BreakRow, DayRow, FreeRow, HandRow, LookInRow, NowRow } from '@/shared/
 import { FillCard } from '../work/fill-card';
 import { FitList } from '../work/fit-list';
 
-const most = { fitting: 4, beside: 3 } as const;
+const most = { fitting: 4, beside: 1 } as const;
 
 /** The day of one person in the order of time, with what can be done at each place of it. */
 export function DayList({

@@ -85,7 +85,7 @@ export function BenchFits({
 }
 
 const useStyles = makeStyles(() => ({
-  part: { paddingTop: 12, rowGap: 10 },
+  part: { paddingTop: 12, rowGap: 14 },
   head: { flexDirection: 'row', alignItems: 'baseline', justifyContent: 'space-between', columnGap: 12 },
   title: { fontSize: 15, flexShrink: 1 },
   ways: { flexDirection: 'row', columnGap: 24 },

@@ -1,5 +1,6 @@
 import { View } from 'react-native';
 import type { FitDto, FreeStretchDto } from '@/shared/contract/bench-plan';
+import { leastPartMinutes } from '@/shared/contract/work';
 import { NBSP } from '../format/marks';
 import { Button } from '../primitives/button';
 import { Txt } from '../primitives/txt';
@@ -77,7 +78,7 @@ export function FitRows({
             <View style={styles.words}>
               <WorkName tone="ink2" work={fit.work} />
               <Txt kind="small" tone="ink2">
-                {`${fit.work.leftLongMinutes}${NBSP}min · ${as.because}`}
+                {`${leastDetail(fit.work)} · ${as.because}`}
               </Txt>
             </View>
           </View>
@@ -91,6 +92,12 @@ export function FitRows({
     </View>
   );
 }
+
+/** What it takes at least: '30 min', of work that is done in parts '15 min or more of 60'. */
+const leastDetail = ({ splittable, leftLongMinutes }: FitDto['work']): string =>
+  splittable && leftLongMinutes > leastPartMinutes
+    ? `${leastPartMinutes}${NBSP}min or more of ${leftLongMinutes}`
+    : `${leftLongMinutes}${NBSP}min`;
 
 const useStyles = makeStyles(() => ({
   row: { flexDirection: 'row', alignItems: 'center', columnGap: 12, paddingVertical: 6, minHeight: 44 },

@@ -69,7 +69,7 @@ describe('the foot of the bench', () => {
     const rows = part.getAllByRole('listitem').map((row) => row.textContent?.replaceAll('\u00a0', ' '));
     expect(rows).toEqual([
       'Brake bleed, R-241630 min · bay 4 · your skill · highTake it',
-      'Module cleaning60 min · 25 min too long',
+      'Module cleaning15 min or more of 60 · 25 min too long',
     ]);
     expect(part.getAllByRole('button', { name: /^Take it/ })).toHaveLength(1);
   });
