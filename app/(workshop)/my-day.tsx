@@ -9,7 +9,7 @@ import { useSaveDaySheet } from '@/shared/client/papers';
 import type { MyDayDto } from '@/shared/contract/bench-plan';
 import { DayList } from '@/shared/screens/my-day/day-list';
 import { DayWalk } from '@/shared/ui/bench-plan/day-walk';
-import { clock, dateLong } from '@/shared/ui/format/clock';
+import { clock, date, dateLong } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { EN_DASH } from '@/shared/ui/format/marks';
 import { dayOf, instantOfDay } from '@/shared/ui/format/zone';
@@ -20,6 +20,7 @@ import { Screen } from '@/shared/ui/screen/screen';
 import { ErrorState } from '@/shared/ui/states/error-state';
 import { Forbidden } from '@/shared/ui/states/forbidden';
 import { Loading } from '@/shared/ui/states/loading';
+import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
@@ -34,6 +35,7 @@ export default function MyDay() {
   const today = dayOf(now, zone);
   const named = params.day && /^\d{4}-\d\d-\d\d$/.test(params.day) ? params.day : null;
   const day = named ?? today;
+  const phone = useBreakpoint() === 'phone';
   const gate = useGate('work:read');
   const offline = useLink().state === 'down';
   // Null is today, also past midnight.
@@ -46,7 +48,7 @@ export default function MyDay() {
       header={
         <HeaderBar
           title="My day"
-          sub={[dateLong(instantOfDay(day, noon, zone), zone), hours].filter(Boolean).join(' · ')}
+          sub={[(phone ? date : dateLong)(instantOfDay(day, noon, zone), zone), hours].filter(Boolean).join(' · ')}
           clock={clock(now, zone, marks)}
           tools={
             query.data ? (

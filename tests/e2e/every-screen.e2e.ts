@@ -1,10 +1,11 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import type { RepairListDto } from '@/shared/contract/repair';
+import type { WorkListDto } from '@/shared/contract/work';
 import { roles, type Role } from '@/shared/contract/roles';
 import { describeInBrowser, seriousFindings, shot, type Visitor } from '../support/browser';
 import { drawn, member, openHouse, overflow, slowTest, type House, type ScreenSize } from './house';
 
-/** Every address of the workshop; those of charges and repairs by the repair's number, one in each stage and step. */
+/** Every address of the workshop; those of charges, repairs and other work by their number, one in each stage and step. */
 const screens = [
   '/bench',
   '/bench-plan',
@@ -45,12 +46,32 @@ const screens = [
   '/spares/demo-spare-S-0422/reading',
   '/spares/demo-spare-S-0422/edit',
   '/alerts',
+  '/my-day',
+  '/work',
+  '/work/new',
+  '/work/W-0012',
+  '/work/W-0012/edit',
+  '/work/no-such-work',
   '/waits',
   '/workshop',
-  ...['people', 'chargers', 'module-types', 'pack-types', 'meters', 'resistors', 'limits', 'hours', 'walls'].map(
-    (section) => `/workshop?section=${section}`,
-  ),
+  ...[
+    'people',
+    'staffing',
+    'skills',
+    'places',
+    'chargers',
+    'module-types',
+    'pack-types',
+    'meters',
+    'resistors',
+    'limits',
+    'hours',
+    'walls',
+  ].map((section) => `/workshop?section=${section}`),
   '/workshop/people/demo-bram',
+  '/workshop/staffing/demo-bram',
+  '/workshop/skills/new',
+  '/workshop/places/new',
   '/workshop/chargers/new',
   '/workshop/chargers/demo-charger-C2',
   '/workshop/module-types/new',
@@ -83,6 +104,9 @@ const ofRole: Record<Exclude<Role, 'manager'>, readonly (typeof screens)[number]
   ],
   technician: [
     '/bench',
+    '/my-day',
+    '/work/W-0012',
+    '/workshop/staffing/demo-bram',
     '/bench-plan',
     '/charges/R-2411',
     '/repairs',
@@ -107,6 +131,8 @@ describeInBrowser('every screen', () => {
   let charges: Record<string, string>;
   /** Ids by number, that of the one being proven by 'R-proven'. */
   let repairs: Record<string, string>;
+  /** Ids by number. */
+  let work: Record<string, string>;
   /** What axe has looked at: the same screen for another role is not looked at twice. */
   const judged = new Set<string>();
 
@@ -123,6 +149,8 @@ describeInBrowser('every screen', () => {
     repairs = Object.fromEntries(
       listed.repairs.map(({ id, number, step }) => [step === 'prove' ? 'R-proven' : number, id]),
     );
+    const others = (await (await reader.context.request.get(`${house.server.url}/api/work`)).json()) as WorkListDto;
+    work = Object.fromEntries(others.work.map(({ id, number }) => [number, id]));
     await reader.close();
   });
   afterAll(() => house?.close());
@@ -149,8 +177,8 @@ describeInBrowser('every screen', () => {
   });
 
   async function look({ page, problems }: Visitor, screen: string, role: Role, size: ScreenSize): Promise<string[]> {
-    const ids = screen.startsWith('/repairs') ? repairs : charges;
-    await page.goto(screen.replace(/R-\w+/, (repair) => ids[repair] ?? repair));
+    const ids = screen.startsWith('/repairs') ? repairs : screen.startsWith('/work/') ? work : charges;
+    await page.goto(screen.replace(/\b[RW]-\w+/, (number) => ids[number] ?? number));
     await drawn(page);
     const name = `every-${size}-${role}${screen.replace(/[^\w-]+/g, '-')}`;
     await shot(page, name);

@@ -29,6 +29,8 @@ describeInBrowser('the built web app', () => {
     ['/wall', 'wall'],
     ['/sign-in', 'phone'],
     ['/bench-plan', 'wide'],
+    ['/my-day', 'phone'],
+    ['/work/new', 'phone'],
     ['/no/such/page', 'phone'],
   ] as const)(
     '%s opened directly on a %s screen draws words, without an error or a request to elsewhere',

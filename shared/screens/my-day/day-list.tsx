@@ -5,14 +5,15 @@ import { actProblem } from '@/shared/client/charge-acts';
 import { useLookIn } from '@/shared/client/charges';
 import { useLink } from '@/shared/client/link';
 import type { FreeStretchDto, MyDayDto } from '@/shared/contract/bench-plan';
+import { Link } from '@/shared/ui/primitives/link';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
-import { dayEntries, type DayEntry } from '@/shared/ui/my-day/day-entries';
+import { dayEntries, foldPast, type DayEntry } from '@/shared/ui/my-day/day-entries';
 import { BreakRow, DayRow, FreeRow, HandRow, LookInRow, NowRow } from '@/shared/ui/my-day/day-rows';
 import { FillCard } from '../work/fill-card';
 import { FitList } from '../work/fit-list';
 
-const most = { fitting: 4, beside: 3 } as const;
+const most = { fitting: 4, beside: 1 } as const;
 
 /** The day of one person in the order of time, with what can be done at each place of it. */
 export function DayList({
@@ -41,6 +42,8 @@ export function DayList({
     onStale();
   };
   const entries = dayEntries(day, now, today);
+  const { over, rest } = foldPast(entries, now);
+  const [unfolded, setUnfolded] = useState(false);
   const rowOf = (entry: DayEntry) => {
     switch (entry.kind) {
       case 'now':
@@ -100,8 +103,15 @@ export function DayList({
       {day.present.length > 0 && entries.every(({ kind }) => kind === 'now' || kind === 'break') ? (
         <Txt tone="ink2">Nothing of the bench plan is left for you on this day.</Txt>
       ) : null}
+      {over.length > 0 ? (
+        <Link
+          kind="small"
+          title={unfolded ? 'Hide what is over' : `Show what is over: ${over.length}`}
+          onPress={() => setUnfolded(!unfolded)}
+        />
+      ) : null}
       <View role="list" aria-label="My day">
-        {entries.map(rowOf)}
+        {(unfolded ? entries : rest).map(rowOf)}
       </View>
     </View>
   );

@@ -4,17 +4,17 @@ import { useCan, useMember } from '@/shared/client/session';
 import type { PlanBlockDto } from '@/shared/contract/bench-plan';
 import { moment } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
-import { NBSP } from '@/shared/ui/format/marks';
 import { Link } from '@/shared/ui/primitives/link';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { makeStyles } from '@/shared/ui/theme/make-styles';
-import { fitsTitle, minutesLeft } from '@/shared/ui/work/fit-words';
+import { fitNow } from '@/shared/ui/work/fit-now';
+import { fitsTitle, freeWords, minutesLeft, nothingFits } from '@/shared/ui/work/fit-words';
 import { FillCard } from './fill-card';
 import { FitList } from './fit-list';
 
 const most = { fitting: 3, beside: 2 } as const;
 
-/** The foot of the bench: one's fills that are still to come, and what fits the first own wait. */
+/** The foot of the bench: one's fills that are still to come, and what fits the first own wait that something fits. */
 export function BenchFits({
   now,
   later,
@@ -33,9 +33,13 @@ export function BenchFits({
   const me = useMember().person.id;
   const mayRead = useCan('work:read');
   const query = useFits(mayRead);
-  const stretch = query.data?.people
-    .find(({ person }) => person.id === me)
-    ?.stretches.find(({ to }) => Date.parse(to) > now);
+  const ahead = (query.data?.people.find(({ person }) => person.id === me)?.stretches ?? []).filter(
+    ({ to }) => Date.parse(to) > now,
+  );
+  // A wait into which nothing fits is named, and the next one with something is shown.
+  const fitting = ahead.find((one) => one.fits.some((fit) => fitNow(fit, one, now).fits));
+  const first = ahead[0];
+  const stretch = fitting ?? first;
   const at = (ms: number) => moment(ms, zone, now, marks);
   const renew = () => {
     void query.refetch();
@@ -54,9 +58,14 @@ export function BenchFits({
               {fitsTitle(stretch, now, at)}
             </Txt>
             <Txt kind="small" tone="ink2" nowrap>
-              {`${minutesLeft(stretch, now)}${NBSP}min free`}
+              {freeWords(minutesLeft(stretch, now))}
             </Txt>
           </View>
+          {first && first !== stretch ? (
+            <Txt kind="small" tone="ink2">
+              {nothingFits(first, now, at)}
+            </Txt>
+          ) : null}
           <FitList stretch={stretch} now={now} most={most} onStale={renew} />
         </View>
       ) : query.data ? (
@@ -76,7 +85,7 @@ export function BenchFits({
 }
 
 const useStyles = makeStyles(() => ({
-  part: { paddingTop: 12, rowGap: 10 },
+  part: { paddingTop: 12, rowGap: 14 },
   head: { flexDirection: 'row', alignItems: 'baseline', justifyContent: 'space-between', columnGap: 12 },
   title: { fontSize: 15, flexShrink: 1 },
   ways: { flexDirection: 'row', columnGap: 24 },

@@ -43,6 +43,24 @@ export function dayEntries(day: MyDayDto, now: number, today: string): DayEntry[
 
 const times = ({ from, to }: Span) => ({ at: Date.parse(from), to: Date.parse(to) });
 
+/** What is over this long stays in sight, ms. */
+const justOverMs = 30 * 60_000;
+
+/**
+ * Parts the day: what is over and done with is folded away, what is late or only just over stays with what is to come. A day
+ * that has passed is not folded: there is nothing else to see in it.
+ */
+export function foldPast(entries: readonly DayEntry[], now: number): { over: DayEntry[]; rest: DayEntry[] } {
+  if (!entries.some(({ kind }) => kind === 'now')) return { over: [], rest: [...entries] };
+  const isOver = (entry: DayEntry): boolean => {
+    if (entry.kind === 'now' || entry.to > now - justOverMs) return false;
+    if (entry.kind === 'look-in') return entry.lookIn.doneAt !== null;
+    const state = entry.kind === 'block' ? (entry.block.stint?.state ?? null) : null;
+    return state !== 'taken' && state !== 'begun';
+  };
+  return { over: entries.filter(isOver), rest: entries.filter((entry) => !isOver(entry)) };
+}
+
 /** Where the hands of a block are done or looked up; null: it is a fill, which has its own buttons. */
 export function wayOf({ kind, chargeId, to }: PlanBlockDto, now: number): string | null {
   if (kind === 'fill' || chargeId === null) return null;

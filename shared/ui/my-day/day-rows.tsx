@@ -4,12 +4,13 @@ import type { PlanBlockDto, PlanLookInDto } from '@/shared/contract/bench-plan';
 import { clock } from '../format/clock';
 import { duration } from '../format/duration';
 import { useFormats } from '../format/formats';
-import { EN_DASH, NBSP } from '../format/marks';
+import { EN_DASH } from '../format/marks';
 import { Button } from '../primitives/button';
 import { Link } from '../primitives/link';
 import { PressableLink } from '../primitives/pressable-link';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
+import { freeWords, minutesLeft } from '../work/fit-words';
 import { wayOf, type DayEntry } from './day-entries';
 
 /** A row of the day: its clock at the left, what there is to do beside it. */
@@ -149,10 +150,11 @@ export function LookInRow({
 
 /** A break. */
 export function BreakRow({ entry, now }: { entry: Extract<DayEntry, { kind: 'break' }>; now: number }) {
+  const styles = useStyles();
   const { zone, marks } = useFormats();
   return (
     <DayRow at={entry.at} past={entry.to <= now}>
-      <Txt tone="ink3">{`Break, to ${clock(entry.to, zone, marks)}`}</Txt>
+      <Txt tone="ink3" style={styles.plain}>{`Break, to ${clock(entry.to, zone, marks)}`}</Txt>
     </DayRow>
   );
 }
@@ -170,11 +172,10 @@ export function FreeRow({
   const styles = useStyles();
   const { zone, marks } = useFormats();
   const from = Math.max(entry.at, now);
-  const minutes = Math.max(0, Math.floor((entry.to - from) / 60_000));
   return (
     <DayRow at={entry.at}>
       <View style={styles.free}>
-        <Txt bold>{`${minutes}${NBSP}min free`}</Txt>
+        <Txt bold>{freeWords(minutesLeft(entry.free, now))}</Txt>
         <Txt kind="small" tone="ink2">
           {[
             `${clock(from, zone, marks)}${EN_DASH}${clock(entry.to, zone, marks)}`,
@@ -196,6 +197,7 @@ const useStyles = makeStyles(({ colors }) => ({
   what: { flex: 1, minWidth: 0, rowGap: 6 },
   own: { backgroundColor: colors.well, borderRadius: 4, paddingHorizontal: 12, paddingVertical: 8, minHeight: 48 },
   pressed: { opacity: 0.8 },
+  plain: { paddingTop: 8, minHeight: 36 },
   free: {
     borderWidth: 1.5,
     borderStyle: 'dashed',

@@ -1,11 +1,13 @@
 import { View } from 'react-native';
 import type { FitDto, FreeStretchDto } from '@/shared/contract/bench-plan';
+import { leastPartMinutes } from '@/shared/contract/work';
 import { NBSP } from '../format/marks';
 import { Button } from '../primitives/button';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { fitNow, type FitNow } from './fit-now';
 import { fitDetail } from './fit-words';
+import { WorkName } from './work-name';
 import { workTitle } from './work-words';
 
 type Fitting = Extract<FitNow, { fits: true }>;
@@ -50,7 +52,7 @@ export function FitRows({
         {fitting.map(({ fit, as }) => (
           <View key={fit.work.id} role="listitem" style={styles.row}>
             <View style={styles.words}>
-              <Txt bold>{workTitle(fit.work)}</Txt>
+              <WorkName bold work={fit.work} />
               <Txt kind="small" tone="ink2">
                 {fitDetail(fit, as.minutes)}
               </Txt>
@@ -74,9 +76,9 @@ export function FitRows({
         {beside.map(({ fit, as }) => (
           <View key={fit.work.id} role="listitem" style={styles.row}>
             <View style={styles.words}>
-              <Txt tone="ink2">{workTitle(fit.work)}</Txt>
+              <WorkName tone="ink2" work={fit.work} />
               <Txt kind="small" tone="ink2">
-                {`${fit.work.leftLongMinutes}${NBSP}min · ${as.because}`}
+                {`${leastDetail(fit.work)} · ${as.because}`}
               </Txt>
             </View>
           </View>
@@ -90,6 +92,12 @@ export function FitRows({
     </View>
   );
 }
+
+/** What it takes at least: '30 min', of work that is done in parts '15 min or more of 60'. */
+const leastDetail = ({ splittable, leftLongMinutes }: FitDto['work']): string =>
+  splittable && leftLongMinutes > leastPartMinutes
+    ? `${leastPartMinutes}${NBSP}min or more of ${leftLongMinutes}`
+    : `${leftLongMinutes}${NBSP}min`;
 
 const useStyles = makeStyles(() => ({
   row: { flexDirection: 'row', alignItems: 'center', columnGap: 12, paddingVertical: 6, minHeight: 44 },

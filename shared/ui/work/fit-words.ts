@@ -1,5 +1,6 @@
 /** What is said of a free stretch and of the work that fits it. Pure; instants are epoch ms. */
 import type { FitDto, FreeStretchDto } from '@/shared/contract/bench-plan';
+import { duration } from '../format/duration';
 import { NBSP } from '../format/marks';
 
 /** 'Fits the wait at 14:55', 'Fits the wait now', 'Fits at 14:55'. @param at writes an instant */
@@ -9,9 +10,19 @@ export function fitsTitle(stretch: Pick<FreeStretchDto, 'from' | 'waitOf'>, now:
   return `Fits ${stretch.waitOf ? 'the wait ' : ''}${when}`;
 }
 
+/** '35 min free'; from three hours on '7 h 00 free'. */
+export const freeWords = (minutes: number): string =>
+  `${minutes < 180 ? `${minutes}${NBSP}min` : duration(minutes * 60, 'minute')} free`;
+
 /** Minutes of a stretch that are still to come. */
 export const minutesLeft = ({ from, to }: Pick<FreeStretchDto, 'from' | 'to'>, now: number): number =>
   Math.max(0, Math.floor((Date.parse(to) - Math.max(now, Date.parse(from))) / 60_000));
+
+/** 'Nothing fits the 12 min at 14:10.', 'Nothing fits the 12 min now.' @param at writes an instant */
+export function nothingFits(stretch: Pick<FreeStretchDto, 'from' | 'to'>, now: number, at: (ms: number) => string) {
+  const from = Date.parse(stretch.from);
+  return `Nothing fits the ${minutesLeft(stretch, now)}${NBSP}min ${from <= now ? 'now' : `at ${at(from)}`}.`;
+}
 
 /** '30 min · bay 4 · your skill'; of work that is done in parts '40 min of 60'. */
 export function fitDetail({ work }: Pick<FitDto, 'work'>, minutes: number): string {

@@ -20,9 +20,7 @@ export function WorkFacts({ work, now, onGo }: { work: WorkDto; now: number; onG
     { name: 'Place', value: work.place?.name ?? 'any' },
     { name: 'Skill', value: work.skill?.name ?? 'none' },
     { name: 'Priority', value: workPriorityNames[work.priority] },
-    ...(work.dueAt
-      ? [{ name: 'Over by', value: at(work.dueAt), note: isWorkLate(work, now) ? 'late' : undefined }]
-      : []),
+    ...(work.dueAt ? [{ name: 'Due', value: at(work.dueAt), note: isWorkLate(work, now) ? 'late' : undefined }] : []),
     { name: 'In parts', value: work.splittable ? 'yes' : 'no' },
   ];
   return (

@@ -88,7 +88,7 @@ export const workNames = {
   skill: 'Skill',
   place: 'Place',
   priority: 'Priority',
-  due: 'To be over by',
+  due: 'Due',
   repair: 'For the repair',
   splittable: 'May be done in parts',
   note: 'Note',
@@ -122,7 +122,7 @@ export function foldedWords(typed: WorkTyped, named: WorkNamed): string {
     typed.placeId ? named.place(typed.placeId) : 'any place',
     typed.skillId ? named.skill(typed.skillId) : 'no skill asked for',
     `${workPriorityNames[typed.priority].toLowerCase()} priority`,
-    typed.dueAt.time.trim() === '' ? 'no due time' : `over by ${typed.dueAt.time}`,
+    typed.dueAt.time.trim() === '' ? 'no due time' : `due ${typed.dueAt.time}`,
     ...(typed.splittable ? ['in parts'] : []),
   ];
   return parts.join(', ');

@@ -7,6 +7,7 @@ import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
+import { WorkName } from './work-name';
 import { asksFor, isWorkLate, leftWords, whoHasIt, workMinutes, workTitle } from './work-words';
 
 export interface WorkShown {
@@ -42,7 +43,7 @@ function WorkTable({ work, now, onOpen }: WorkShown) {
           share: 2.2,
           cell: (one) => (
             <View>
-              <Txt bold>{workTitle(one)}</Txt>
+              <WorkName bold work={one} />
               <Txt kind="small" tone="ink2">
                 {one.number}
               </Txt>
@@ -61,7 +62,7 @@ function WorkTable({ work, now, onOpen }: WorkShown) {
         },
         {
           key: 'due',
-          title: 'Over by',
+          title: 'Due',
           width: 104,
           numeric: true,
           cell: (one) =>
@@ -97,9 +98,7 @@ export function WorkList({ work, now, within = false, onOpen }: WorkShown & { wi
               style={({ pressed }) => [styles.row, pressed && styles.pressed]}
             >
               <View style={styles.line}>
-                <Txt bold style={styles.shrink}>
-                  {within ? one.title : workTitle(one)}
-                </Txt>
+                <WorkName bold work={within ? { ...one, repair: null } : one} style={styles.shrink} />
                 {due ? (
                   <Txt kind="small" tone={late ? 'alarm' : 'ink2'} bold={late} nowrap>
                     {due}

@@ -72,9 +72,12 @@ const dayMonth = (day: string): string => {
   return `${of}${NBSP}${months[month - 1] ?? ''}`;
 };
 
-/** '24 Dec–2 Jan, leave' */
-export const dayOffWords = ({ from, to, note }: { from: string; to: string; note: string | null }): string =>
-  `${dayMonth(from)}${to === '' || to === from ? '' : `${EN_DASH}${dayMonth(to)}`}${note ? `, ${note}` : ''}`;
+/** '24 Dec–2 Jan, leave', '8–10 Dec', '8 Dec' */
+export function dayOffWords({ from, to, note }: { from: string; to: string; note: string | null }): string {
+  const one = to === '' || to === from;
+  const first = !one && from.slice(0, 7) === to.slice(0, 7) ? String(Number(from.slice(8))) : dayMonth(from);
+  return `${first}${one ? '' : `${EN_DASH}${dayMonth(to)}`}${note ? `, ${note}` : ''}`;
+}
 
 /** Those that are not over yet, the next one first. @param today 'YYYY-MM-DD' */
 export const daysOffToCome = <T extends { from: string; to: string }>(daysOff: readonly T[], today: string): T[] =>

@@ -1,6 +1,7 @@
 import { placeKindNames, type PlaceDto, type SkillDto, type StaffingDto } from '@/shared/contract/staffing';
 import { EN_DASH } from '../format/marks';
 import { Link } from '../primitives/link';
+import { useBreakpoint } from '../theme/use-breakpoint';
 import { Table, type Column } from '../primitives/table';
 import { breakWords, dayOffWords, daysOffToCome, hoursWords, skillNames } from './staffing-form';
 
@@ -42,6 +43,9 @@ export function StaffingTable({
   mayChange: boolean;
   onEdit: (person: StaffingDto) => void;
 }) {
+  const phone = useBreakpoint() === 'phone';
+  // The phone has no headings: what is there says what it is, and what is not is left out.
+  const said = (name: string, words: string) => (phone ? words && `${name} ${words}` : words || EN_DASH);
   return (
     <Table
       label="Hours of people"
@@ -54,7 +58,8 @@ export function StaffingTable({
           title: 'Hours',
           phone: 'detail',
           share: 2,
-          cell: ({ hours, hoursNow }) => (hours === null ? 'the workshop’s' : hoursWords(hoursNow)),
+          cell: ({ hours, hoursNow }) =>
+            hours !== null ? hoursWords(hoursNow) : phone ? 'the workshop’s hours' : 'the workshop’s',
         },
         {
           key: 'breaks',
@@ -62,7 +67,7 @@ export function StaffingTable({
           phone: 'detail',
           share: 1.3,
           tone: 'ink2',
-          cell: ({ breaks }) => breakWords(breaks) || EN_DASH,
+          cell: ({ breaks }) => said(breaks.length > 1 ? 'breaks' : 'break', breakWords(breaks)),
         },
         {
           key: 'off',
@@ -72,7 +77,7 @@ export function StaffingTable({
           tone: 'ink2',
           cell: ({ daysOff }) => {
             const next = daysOffToCome(daysOff, today)[0];
-            return next ? dayOffWords(next) : EN_DASH;
+            return said('off', next ? dayOffWords(next) : '');
           },
         },
         {
@@ -81,7 +86,7 @@ export function StaffingTable({
           phone: 'detail',
           share: 1.6,
           tone: 'ink2',
-          cell: ({ skillIds }) => skillNames(skillIds, skills) || EN_DASH,
+          cell: ({ skillIds }) => said('', skillNames(skillIds, skills)).trim(),
         },
         ...editColumn<StaffingDto>(mayChange, ({ person }) => `the hours of ${person.name}`, onEdit),
       ]}

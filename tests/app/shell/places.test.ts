@@ -34,6 +34,8 @@ describe('places', () => {
     ['/spares', 'spares', 'spares'],
     ['/more', 'more', 'more'],
     ['/bench-plan', 'more', 'bench-plan'],
+    ['/my-day', 'bench', 'bench'],
+    ['/work', 'more', 'more'],
     ['/waits', 'more', 'waits'],
     ['/workshop', 'more', 'workshop'],
   ])('%s shows the bottom bar with %s', (path, tab, rail) => {
@@ -49,6 +51,8 @@ describe('places', () => {
     ['/spares/s1', 'spares'],
     ['/spares/new', 'spares'],
     ['/workshop/module-types', 'workshop'],
+    ['/work/new', 'more'],
+    ['/work/w1', 'more'],
     ['/me', 'more'],
   ])('%s is a task: no bottom bar, %s in the rail', (path, rail) => {
     expect(placeOf(path)).toEqual({ tab: null, rail });

@@ -39,10 +39,10 @@ export function fakeServer(role: Role) {
         },
       ]),
   };
-  const noWork = { work: [], counts: { open: 0, taken: 0, begun: 0, over: 0 }, nextPage: null };
-  // Every repair's page asks for its other work.
+  // The page of a repair asks for its other work: an unanswered question counts as no connection.
   for (const state of ['open', 'over'])
-    answers[`GET /api/work?state=${state}&repairId=r1`] = () => Response.json(noWork);
+    answers[`GET /api/work?state=${state}&repairId=r1`] = () =>
+      Response.json({ work: [], counts: { open: 0, taken: 0, begun: 0, over: 0 }, nextPage: null });
   vi.stubGlobal('fetch', async (path: string, init: RequestInit = {}) => {
     const method = init.method ?? 'GET';
     const body: unknown = init.body ? JSON.parse(init.body as string) : undefined;

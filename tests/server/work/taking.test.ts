@@ -1,5 +1,6 @@
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import { workForm } from '@/tests/support/benched';
+import { repairForm } from '@/tests/support/repaired';
 import { makeTestServer, type TestServer } from '@/tests/support/server';
 import { key, minute } from '../charges/bench';
 import { makeCrew, refused, spanOf, stintOf, taken, type Crew } from './crew';
@@ -42,6 +43,20 @@ describe('work', () => {
       dueAt: '09:59 is over. Type a time that is still to come, or none.',
     });
     expect((await add({ repairId: 'nobodys' }))[2]).toHaveProperty('repairId');
+  });
+
+  test('of one repair is listed alone, open and over, and counted alone', async () => {
+    const repair = await taken<{ id: string }>(crew.send('repairs', repairForm(null)));
+    const own = await crew.add({ title: 'Own', repairId: repair.id });
+    const gone = await crew.add({ title: 'Gone', repairId: repair.id });
+    await crew.add({ title: 'Other' });
+    await taken(crew.send(`work/${gone.id}/drop`, { reason: 'Sold.' }));
+    const of = async (state: string) =>
+      (await server.agentFor('technician').get(`/api/work?state=${state}&repairId=${repair.id}`).expect(200)).body;
+    expect((await of('open')).work.map(({ id }: { id: string }) => id)).toEqual([own.id]);
+    const over = await of('over');
+    expect(over.work.map(({ id }: { id: string }) => id)).toEqual([gone.id]);
+    expect(over.counts).toEqual({ open: 1, taken: 0, begun: 0, over: 1 });
   });
 
   test('is listed by what its minutes are worth, then by when it is due; what is over last ended first', async () => {
