@@ -105,6 +105,7 @@ describe('the routes', () => {
     const carry = routes.filter(({ handler }) => handler.asks?.idempotent).map(({ name }) => name);
     expect(carry.sort()).toEqual([
       'POST /api/charges',
+      'POST /api/charges/:id/checks',
       'POST /api/charges/:id/current-off',
       'POST /api/charges/:id/fit',
       'POST /api/charges/:id/hold',
