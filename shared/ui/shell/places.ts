@@ -85,6 +85,7 @@ const titles: Readonly<Record<string, string>> = {
   plan: 'Plan a charge',
   more: 'More',
   me: 'Name and password',
+  waiting: 'Waiting on this device',
   alerts: 'Alerts',
   waits: 'Waits',
   'repairs/index': 'Repairs',
