@@ -1,11 +1,5 @@
 import { queryOptions, useQuery, type QueryClient } from '@tanstack/react-query';
-import type {
-  AnswerCheckInput,
-  ChargeCardDto,
-  ChargeDto,
-  ReadingInput,
-  RestCheckInput,
-} from '@/shared/contract/charge';
+import type { ChargeCardDto, ChargeDto, ReadingInput } from '@/shared/contract/charge';
 import type { Instant } from '@/shared/contract/common';
 import { api } from './api';
 import { started } from './notify-state';

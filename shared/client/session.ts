@@ -14,7 +14,15 @@ import { isOffline, isProblem } from './api-problem';
 import { forgetDrafts } from './draft-store';
 import { queryClient } from './query-client';
 import { roots } from './query-keys';
-import { endedStore, rememberSignedIn, returnTo, signedInBefore, signedInKey, type EndedReason } from './session-state';
+import {
+  endedStore,
+  rememberSignedIn,
+  returnTo,
+  signedInBefore,
+  signedInKey,
+  signedInPerson,
+  type EndedReason,
+} from './session-state';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
@@ -28,7 +36,7 @@ export const sessionQuery = () =>
       if (!session) {
         rememberSignedIn(null);
         forgetKept();
-      }
+      } else if (signedInPerson() !== session.person.id) rememberSignedIn(session.person.id);
       // Somebody else signed in in another tab of this browser: its cookies are this tab's too.
       const last = queryClient.getQueryData<SessionDto | null>([roots.session]);
       if (last && session && last.person.id !== session.person.id) forgetOthers(queryClient);
