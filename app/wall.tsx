@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { useKeptApp } from '@/shared/client/build-offer';
 import { useNow } from '@/shared/client/clock';
 import { useAwake } from '@/shared/client/keep-awake';
 import { useHeardAt } from '@/shared/client/link';
@@ -32,6 +33,7 @@ function Board({ zone }: { zone: string }) {
   const board = useWallBoard(true);
   const awake = useAwake();
   useWallLive(true);
+  useKeptApp();
   return (
     <FormatsProvider languageTag={navigator.language} zone={board.data?.workshop.zone ?? zone}>
       <WallScreen

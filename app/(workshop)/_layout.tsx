@@ -2,13 +2,15 @@ import { Stack, usePathname, useRouter, type Href } from 'expo-router';
 import { useCallback, useEffect, useMemo } from 'react';
 import { View } from 'react-native';
 import { useAlarmBell } from '@/shared/client/alarm-bell';
+import { useBuildOffer, useKeptApp } from '@/shared/client/build-offer';
 import { isOpen, useAlerts, useOpenAlertCount } from '@/shared/client/alerts';
 import { useLink } from '@/shared/client/link';
 import { startLive } from '@/shared/client/live';
+import { takeNewBuild } from '@/shared/client/new-build';
 import { useNotices } from '@/shared/client/notices';
-import { useReadingQueueRunner, useWaitingReadingCount } from '@/shared/client/reading-queue';
 import { useNeedsSomebodyCount } from '@/shared/client/repairs';
-import { useCan, useSession } from '@/shared/client/session';
+import { useCan, useKeptAnswers, useSession } from '@/shared/client/session';
+import { useWaitingCounts, useWaitingRunner } from '@/shared/client/waiting/waiting';
 import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { AlertRegion } from '@/shared/ui/primitives/live-region';
@@ -18,6 +20,8 @@ import { AppFrame } from '@/shared/ui/screen/screen';
 import { ShellStrip } from '@/shared/ui/screen/shell-strip';
 import { SideRail } from '@/shared/ui/screen/side-rail';
 import { TabBar } from '@/shared/ui/screen/tab-bar';
+import { NewBuildStrip } from '@/shared/ui/shell/new-build-strip';
+import { NotTakenStrip } from '@/shared/ui/waiting/not-taken-strip';
 import { NoticePrompt } from '@/shared/ui/shell/notice-prompt';
 import { placeOf, railItems, tabItems } from '@/shared/ui/shell/places';
 import { useTheme } from '@/shared/ui/theme/theme';
@@ -40,7 +44,9 @@ export default function WorkshopLayout() {
   // The socket comes after the first paint.
   useEffect(() => startLive('member'), []);
   useAlarmBell();
-  useReadingQueueRunner();
+  useWaitingRunner();
+  useKeptAnswers();
+  useKeptApp();
 
   const place = placeOf(path);
   const go = ({ href }: NavItem) => router.navigate(href as Href);
@@ -67,18 +73,33 @@ export default function WorkshopLayout() {
   );
 }
 
-/** Under the header of the screen while there is no connection. */
+/** Under the header of every screen: no connection and since when, what was not taken, a new version. */
 function Strip() {
+  const router = useRouter();
+  const path = usePathname();
   const { state, since } = useLink();
-  const waiting = useWaitingReadingCount();
+  const { waiting, refused } = useWaitingCounts();
+  const offer = useBuildOffer();
   const { zone, marks } = useFormats();
   const phone = useBreakpoint() === 'phone';
-  if (state !== 'down' || since === null) return null;
-  return (
-    <View style={{ marginBottom: 12 }}>
-      <OfflineStrip since={clock(since, zone, marks)} waiting={waiting} device={phone ? 'phone' : 'device'} />
-    </View>
-  );
+  const down = state === 'down' && since !== null;
+  const see = path === '/waiting' ? undefined : () => router.push('/waiting' as Href);
+  const strips = [
+    down ? (
+      <OfflineStrip
+        key="offline"
+        since={clock(since, zone, marks)}
+        waiting={waiting}
+        device={phone ? 'phone' : 'device'}
+        onSee={waiting > 0 ? see : undefined}
+      />
+    ) : null,
+    refused > 0 && see ? <NotTakenStrip key="not-taken" count={refused} onSee={see} /> : null,
+    offer.there && !down ? (
+      <NewBuildStrip key="build" onTake={() => void takeNewBuild()} onLater={offer.later} />
+    ) : null,
+  ].filter((strip) => strip !== null);
+  return strips.length === 0 ? null : <View style={{ marginBottom: 12 }}>{strips}</View>;
 }
 
 /** Reads each new alert out, once. */

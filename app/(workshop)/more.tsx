@@ -5,10 +5,10 @@ import { useNow } from '@/shared/client/clock';
 import { useFrontDoor } from '@/shared/client/front-door';
 import { useNotices } from '@/shared/client/notices';
 import { prefer, usePreferences } from '@/shared/client/preferences';
-import { useWaitingReadingCount } from '@/shared/client/reading-queue';
 import { missingHere } from '@/shared/client/secure-context';
 import { useCan, useMember, useSessions, useSignOut, useSignOutEverywhere } from '@/shared/client/session';
 import { armSound, playSound, switchSound, useSoundState } from '@/shared/client/sound';
+import { useWaitingCounts } from '@/shared/client/waiting/waiting';
 import { ProblemLine } from '@/shared/ui/auth/problem-line';
 import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
@@ -111,7 +111,8 @@ function Me() {
   const router = useRouter();
   const { person } = useMember();
   const now = useNow(60_000);
-  const waiting = useWaitingReadingCount();
+  const counts = useWaitingCounts();
+  const waiting = counts.waiting + counts.refused;
   const version = useFrontDoor().data?.version;
   const [open, setOpen] = useState<'sessions' | 'sign-out' | null>(null);
   const sessions = useSessions(open === 'sessions');
@@ -129,6 +130,15 @@ function Me() {
         onPress={() => router.navigate('/me' as Href)}
       />
       <MoreRow title="Signed in on" meaning="Devices, and sign out everywhere" onPress={() => setOpen('sessions')} />
+      {waiting > 0 ? (
+        <MoreRow
+          title="Waiting on this device"
+          value={String(waiting)}
+          meaning="Logged without a connection, not sent yet"
+          href="/waiting"
+          onPress={() => router.navigate('/waiting' as Href)}
+        />
+      ) : null}
       <MoreRow
         title="Sign out"
         meaning={person.email}
@@ -151,8 +161,8 @@ function Me() {
       />
       <ConfirmSheet
         open={open === 'sign-out'}
-        title="Readings wait on this device"
-        fact={`${waiting === 1 ? 'One reading is' : `${waiting} readings are`} not sent yet. They stay here and are sent when you sign in on this device again.`}
+        title="Entries wait on this device"
+        fact={`${waiting === 1 ? 'One entry is' : `${waiting} entries are`} not sent yet. They stay here and are sent when you sign in on this device again.`}
         confirm="Sign out anyway"
         safe="Stay signed in"
         busy={signOut.isPending}

@@ -1,5 +1,5 @@
-// The service worker shows notifications and opens what they speak of. It keeps no files: every page and every
-// number comes from the server, so an old copy can never be mistaken for the present state.
+// The service worker shows notifications and opens what they speak of. The app's own files are kept by sw-shell.js,
+// which the build joins to this one; a number is never kept by either.
 //
 // Notice (from a push, or posted by a page as { type: 'notify', notice }):
 //   { title, body, url, tag }  url: address within this site; tag: one per cause, a later one replaces the earlier.

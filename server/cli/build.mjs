@@ -7,6 +7,7 @@ import { pathToFileURL } from 'node:url';
 import { promisify } from 'node:util';
 import zlib from 'node:zlib';
 import { ensureInstalled } from './install.mjs';
+import { writeServiceWorker } from './web/app-shell.mjs';
 import { fromRoot, runOrExit, say, stampOf } from './tools.mjs';
 
 const webInputs = [
@@ -74,6 +75,7 @@ async function buildWeb() {
     [fromRoot('node_modules/expo/bin/cli'), 'export', '-p', 'web', '--output-dir', 'dist-fresh'],
     { ...webEnv, BIDEWELL_CHUNK_LIST: chunkList },
   );
+  writeServiceWorker(fresh);
   await precompress(fresh);
   fs.copyFileSync(chunkList, path.join(fresh, '.chunks.json')); // the server serves no dot files
   fs.writeFileSync(path.join(fresh, '.stamp'), stamp);

@@ -26,6 +26,16 @@ export const storeAnswer = async (
   } as QueryDeepPartialEntity<IdempotencyKey>);
 };
 
+/** Empties answers that nobody waits for any more; the key keeps saying that its write was done. */
+export const dropAnswersBefore = async (manager: EntityManager, before: number, without: number): Promise<void> => {
+  await manager
+    .createQueryBuilder()
+    .update(IdempotencyKey)
+    .set({ status: without, response: { body: null } } as QueryDeepPartialEntity<IdempotencyKey>)
+    .where('created_at < :before AND status <> :without', { before, without })
+    .execute();
+};
+
 export const deleteKeysBefore = async (manager: EntityManager, before: number): Promise<void> => {
   await manager.createQueryBuilder().delete().from(IdempotencyKey).where('created_at < :before', { before }).execute();
 };

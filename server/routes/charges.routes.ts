@@ -84,6 +84,7 @@ export const chargesRoutes: RoutesModule = (route) => {
     path: '/charges/:id/checks',
     policy: run,
     body: answerCheckSchema,
+    idempotent: true,
     handle: ({ deps, member, params, body, now }) => answerCheck(deps, member, idOf(params), body, now),
   });
   route({

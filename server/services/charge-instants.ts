@@ -4,7 +4,7 @@ import { clockText } from './charge-words';
 import { invalid } from '../errors/domain-error';
 import type { ChargeFile } from './charge-file';
 
-/** A phone's clock may be this far ahead of the server's, ms. */
+/** A phone's clock may be this far off the server's, and who types the minute leaves its seconds out, ms. */
 const CLOCK_SLACK_MS = 60_000;
 
 /**
@@ -23,7 +23,7 @@ export function actInstant(
   const clock = (instant: number): string => clockText(instant, file.workshop.zone, now);
   if (at > now + CLOCK_SLACK_MS)
     throw invalid({ at: `${clock(at)} is still to come. Type when it was, or leave it empty for now.` });
-  if (at < earliest.at)
+  if (at < earliest.at - CLOCK_SLACK_MS)
     throw invalid({ at: `${clock(at)} lies before ${earliest.name} at ${clock(earliest.at)}. Type a later time.` });
-  return Math.min(at, Math.max(now, earliest.at));
+  return Math.min(Math.max(at, earliest.at), Math.max(now, earliest.at));
 }

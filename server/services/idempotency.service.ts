@@ -1,13 +1,26 @@
 import { createHash } from 'node:crypto';
+import type { EntityManager } from 'typeorm';
 import type { Deps, Member } from '../deps';
 import { DomainError, invalid } from '../errors/domain-error';
-import { deleteKeysBefore, findKey, insertKey, storeAnswer } from '../repositories/idempotency-keys.repository';
+import {
+  deleteKeysBefore,
+  dropAnswersBefore,
+  findKey,
+  insertKey,
+  storeAnswer,
+} from '../repositories/idempotency-keys.repository';
 import { idempotencyContext, type IdempotentWrite } from './idempotency-context';
 import { newId } from './ids';
 import { inTransaction } from './unit-of-work';
 
-const keptForMs = 24 * 60 * 60_000;
-/** Status of a row whose effect is committed and whose answer is not stored yet. */
+const dayMs = 24 * 60 * 60_000;
+const answersKeptForMs = dayMs;
+/**
+ * Longer than a device keeps a write that waits for its connection (`keptForMs` in shared/client/waiting): one whose
+ * answer was lost is told weeks later that it was done, and is not done again.
+ */
+const keysKeptForMs = 45 * dayMs;
+/** Status of a row whose effect is committed and whose answer is not stored: not yet, or not any more. */
 export const withoutAnswer = 0;
 
 export interface Answer {
@@ -27,6 +40,18 @@ function canonical(value: unknown): string {
       .map(([name, part]) => `${JSON.stringify(name)}:${canonical(part)}`)
       .join(',')}}`;
   return JSON.stringify(value) ?? 'null';
+}
+
+const tidyEveryMs = 60 * 60_000;
+const tidiedAt = new WeakMap<object, number>();
+
+/** Drops what is too old, once an hour and with the first write: every write would else look through weeks of keys. */
+async function tidy(deps: Deps, manager: EntityManager, now: number): Promise<void> {
+  const last = tidiedAt.get(deps.dataSource);
+  if (last !== undefined && Math.abs(now - last) < tidyEveryMs) return;
+  tidiedAt.set(deps.dataSource, now);
+  await deleteKeysBefore(manager, now - keysKeptForMs);
+  await dropAnswersBefore(manager, now - answersKeptForMs, withoutAnswer);
 }
 
 /** @throws DomainError 400 for a key that is missing or not usable */
@@ -71,7 +96,7 @@ export async function once(
     const write: IdempotentWrite = {
       recorded: false,
       record: async (manager) => {
-        await deleteKeysBefore(manager, now - keptForMs);
+        await tidy(deps, manager, now);
         await insertKey(manager, {
           id,
           workshopId,

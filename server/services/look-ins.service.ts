@@ -1,6 +1,7 @@
-import type { ChargeDto } from '@/shared/contract/charge';
+import type { ChargeDto, LookInInput } from '@/shared/contract/charge';
 import type { Deps, Member } from '../deps';
 import { insertLookIns } from '../repositories/charge-rows.repository';
+import { actInstant } from './charge-instants';
 import { isUnderWay } from './charge-stages';
 import { wrongStage } from './charge-stage-conflict';
 import { markVisit } from './charge-visit';
@@ -9,36 +10,32 @@ import { changeCharge } from './charge-write';
 import { newId } from './ids';
 
 /**
- * Somebody has looked in. Where no look-in was due the visit is kept beside the planned ones, which stay.
- * @throws DomainError 409 where the charge is not under way
+ * Somebody has looked in, now or at the instant they say. Where no look-in was due then the visit is kept beside the
+ * planned ones, which stay.
+ * @throws DomainError 409 where the charge is not under way, 400 for an instant that cannot be
  */
-export function lookIn(
-  deps: Deps,
-  member: Member,
-  id: string,
-  input: { note?: string | null },
-  now: number,
-): Promise<ChargeDto> {
+export function lookIn(deps: Deps, member: Member, id: string, input: LookInInput, now: number): Promise<ChargeDto> {
   return changeCharge(deps, member, id, null, now, async (write) => {
     const { manager, file } = write;
     const { charge } = file;
     if (!isUnderWay(charge.stage)) throw wrongStage(write, 'Nobody has to look in.');
     const note = input.note ?? null;
-    const asked = await markVisit(write, now, note);
-    const known = file.lookIns.some((one) => one.dueAt === now);
+    const at = actInstant(file, input.at, now, { at: charge.startedAt ?? now, name: 'the start' });
+    const asked = await markVisit(write, at, note);
+    const known = file.lookIns.some((one) => one.dueAt === at);
     if (!asked && !known) {
       const extra = {
         id: newId(),
         workshopId: charge.workshopId,
         chargeId: charge.id,
-        dueAt: now,
-        doneAt: now,
+        dueAt: at,
+        doneAt: at,
         personId: member.personId,
         note,
       };
       await insertLookIns(manager, [extra]);
       file.lookIns = [...file.lookIns, extra].sort((one, other) => one.dueAt - other.dueAt);
     }
-    write.note('look-in', note === null ? 'Looked in.' : `Looked in: ${bare(note)}.`);
+    write.note('look-in', note === null ? 'Looked in.' : `Looked in: ${bare(note)}.`, at);
   });
 }

@@ -1,6 +1,6 @@
 /** What is done with a charge before its current: the checks, a time on the bench, or dropping it. */
 import type { PlanOption } from '@/calc/plan-types';
-import type { AnswerCheckInput, ChargeDto } from '@/shared/contract/charge';
+import type { AnswerCheckInput, ChargeDto, CheckItemDto } from '@/shared/contract/charge';
 import type { Deps, Member } from '../deps';
 import { conflict, DomainError, invalid } from '../errors/domain-error';
 import { answersOf, replaceAnswer, updateHold } from '../repositories/charge-rows.repository';
@@ -9,10 +9,11 @@ import { checkSheet } from './charge-checks';
 import { titleOfCheck } from './charge-check-items';
 import { chargeCard, chargeDto } from './charge-dto';
 import { loadFile } from './charge-file';
+import { actInstant } from './charge-instants';
 import { isWaitingToStart } from './charge-stages';
 import { wrongStage } from './charge-stage-conflict';
 import { bare, clockText, lowerFirst, titleOf } from './charge-words';
-import { changeCharge } from './charge-write';
+import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
 import { fromInstant, toInstant } from './instants';
 import { followDrop } from './repair-charges';
@@ -21,8 +22,9 @@ import { inTransaction } from './unit-of-work';
 import { lastChange, staleCharge, toldBy } from './who-changed';
 
 /**
- * Answers one check before clipping on; an earlier answer stays with the charge.
- * @throws DomainError 409 after the start, 422 where the numbers answer
+ * Answers one check before clipping on; an earlier answer stays with the charge. An answer that had to wait for a
+ * connection counts from when it was given, for the question that was read then, and not over a later one.
+ * @throws DomainError 409 after the start or where a late answer is overtaken, 422 where the numbers answer
  */
 export function answerCheck(
   deps: Deps,
@@ -42,6 +44,8 @@ export function answerCheck(
         present: item,
       });
     const note = input.note ?? null;
+    const at = actInstant(file, input.at, now, { at: charge.createdAt, name: 'the plan' });
+    refuseOvertaken(write, input, item, at);
     await replaceAnswer(manager, {
       id: newId(),
       workshopId: charge.workshopId,
@@ -50,14 +54,35 @@ export function answerCheck(
       answer: input.answer,
       note,
       personId: member.personId,
-      at: now,
+      at,
       replacedAt: null,
     });
     const before =
       item.answer === null || item.answer === input.answer ? '' : ` Before: ${lowerFirst(item[item.answer])}.`;
     const said = `${titleOfCheck(input.code)}: ${lowerFirst(item[input.answer])}${note === null ? '' : `, ${bare(note)}`}.`;
-    write.note('check', `${said}${before}`);
+    write.note('check', `${said}${before}`, at);
   });
+}
+
+/** Somebody has answered after a late answer was given, or the question has changed since: a person looks again. */
+function refuseOvertaken({ file, now }: ChargeWrite, input: AnswerCheckInput, item: CheckItemDto, at: number): void {
+  if (input.at === undefined) return;
+  const { zone } = file.workshop;
+  if (item.answeredAt !== null && item.answer !== null && fromInstant(item.answeredAt) > at) {
+    const who = item.answeredBy?.name ?? 'Somebody';
+    const later = clockText(fromInstant(item.answeredAt), zone, now);
+    throw conflict(
+      'answered_later',
+      `${who} answered it at ${later}, after yours of ${clockText(at, zone, now)}: ${lowerFirst(item[item.answer])}. Look again, then answer.`,
+      item,
+    );
+  }
+  if (input.asked !== undefined && input.asked !== item.question)
+    throw conflict(
+      'asked_otherwise',
+      `The question has changed since ${clockText(at, zone, now)}. Now it is: ${item.question}`,
+      item,
+    );
 }
 
 /**

@@ -4,6 +4,7 @@
  * An answer of 401 is met by one refresh of the session per browser, then the call is made once more. Calls that need
  * no session say `open` and are never refreshed.
  */
+import { alone, type Alone } from './alone';
 import { isProblem, OfflineError, problemOf } from './api-problem';
 import { sendForm } from './send-form';
 import { recall, remember } from './storage';
@@ -29,8 +30,7 @@ export interface ApiEnvironment {
   fetch: (input: string, init: RequestInit) => Promise<Response>;
   /** Sends a form and tells how far it is; left out: without telling. */
   sendForm?: (input: string, init: RequestInit, onSent: (share: number) => void) => Promise<Response>;
-  /** Runs the work while no other tab of this browser runs work of the same name. */
-  alone: <T>(name: string, work: () => Promise<T>) => Promise<T>;
+  alone: Alone;
   now: () => number;
   recall: (key: string) => string | null;
   remember: (key: string, value: string | null) => void;
@@ -149,12 +149,6 @@ export function makeApi(env: ApiEnvironment) {
   };
 }
 export type Api = ReturnType<typeof makeApi>;
-
-/** Web Locks where the browser has them (secure contexts); a page without them only has itself to keep in order. */
-const alone = async <T>(name: string, work: () => Promise<T>): Promise<T> => {
-  const locks = (globalThis.navigator as Partial<Navigator> | undefined)?.locks;
-  return locks ? ((await locks.request(name, work)) as T) : work();
-};
 
 export const api: Api = makeApi({
   fetch: (input, init) => fetch(input, init),

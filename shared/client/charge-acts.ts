@@ -8,13 +8,13 @@ import {
   useFitCharge,
   useHandOver,
   useHoldCharge,
-  useLookIn,
   useNextStep,
   useQueueCharge,
   useResumeCharge,
   useShelveCharge,
   useStopCharge,
 } from './charges';
+import { useWaitingWrite } from './waiting/waiting';
 
 /** What somebody else has made of it; null where the error brings none. */
 const presentOf = (error: unknown): Partial<ChargeDto> | null =>
@@ -40,7 +40,7 @@ export function useChargeActs(charge: ChargeDto, done: () => void, onStale: () =
   const resume = useResumeCharge();
   const off = useCurrentOff();
   const next = useNextStep();
-  const lookIn = useLookIn();
+  const lookIn = useWaitingWrite();
   const handOver = useHandOver();
   const fit = useFitCharge();
   const shelve = useShelveCharge();
@@ -72,7 +72,8 @@ export function useChargeActs(charge: ChargeDto, done: () => void, onStale: () =
     /** @param at epoch ms; left out: now */
     currentOff: (at?: number) => off.mutate({ ...base, at: iso(at) }, outcome),
     nextStep: () => next.mutate(base, outcome),
-    lookIn: () => lookIn.mutate({ id: charge.id }, outcome),
+    /** Waits on this device where there is no connection. */
+    lookIn: () => lookIn.mutate({ kind: 'look-in', chargeId: charge.id, title: charge.title, input: {} }, outcome),
     handOver: (personId: string) => handOver.mutate({ ...base, personId }, outcome),
     fit: (note: string | null) => fit.mutate({ ...base, note }, outcome),
     shelve: (shelfPlace: string | null) => shelve.mutate({ ...base, shelfPlace }, outcome),

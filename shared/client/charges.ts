@@ -1,11 +1,5 @@
 import { queryOptions, useQuery, type QueryClient } from '@tanstack/react-query';
-import type {
-  AnswerCheckInput,
-  ChargeCardDto,
-  ChargeDto,
-  ReadingInput,
-  RestCheckInput,
-} from '@/shared/contract/charge';
+import type { ChargeCardDto, ChargeDto, ReadingInput } from '@/shared/contract/charge';
 import type { Instant } from '@/shared/contract/common';
 import { api } from './api';
 import { started } from './notify-state';
@@ -51,7 +45,7 @@ export interface ChargeAct {
   rev: number;
 }
 
-/** A write on a charge: POST /charges/:id/<act>, answered by the whole charge. */
+/** A write on a charge that needs the connection (readings, look-ins and checks wait: waiting/waiting.ts): POST /charges/:id/<act>, answered by the whole charge. */
 const useChargeWrite = <Input extends { id: string; rev?: number }>(
   act: string,
   changes: Root[],
@@ -67,7 +61,6 @@ const useChargeWrite = <Input extends { id: string; rev?: number }>(
     changes,
   });
 
-export const useAnswerCheck = () => useChargeWrite<AnswerCheckInput & { id: string }>('checks', touched);
 export const useQueueCharge = () => useChargeWrite<ChargeAct & { clipOnAt: Instant | null }>('queue', withStock);
 export const useStartCharge = () =>
   useChargeWrite<ChargeAct & { at?: Instant }>('start', withStock, () => started.set(true));
@@ -77,15 +70,10 @@ export const useStopCharge = () =>
   useChargeWrite<ChargeAct & { reason: string; at?: Instant; quarantine?: boolean }>('stop', withStock);
 export const useCurrentOff = () => useChargeWrite<ChargeAct & { at?: Instant }>('current-off', touched);
 export const useNextStep = () => useChargeWrite<ChargeAct>('next-step', withStock);
-export const useLookIn = () => useChargeWrite<{ id: string; note?: string | null }>('look-ins', touched);
 export const useHandOver = () => useChargeWrite<ChargeAct & { personId: string }>('hand-over', touched);
-export const useRestCheck = () => useChargeWrite<RestCheckInput & ChargeAct>('rest-check', withStock);
 export const useFitCharge = () => useChargeWrite<ChargeAct & { note?: string | null }>('fit', withStock);
 export const useShelveCharge = () =>
   useChargeWrite<ChargeAct & { shelfPlace: string | null; note?: string | null }>('shelve', withStock);
-
-/** Logs a reading at once; `useReadingQueue` keeps it on this device where there is no connection. */
-export const useLogReading = () => useChargeWrite<Partial<ReadingInput> & { id: string }>('readings', touched);
 
 export const useCorrectReading = () =>
   useWrite({

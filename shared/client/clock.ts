@@ -5,6 +5,7 @@
  * once; less: slewed at 5 %, so that no countdown jumps or runs backwards.
  */
 import { useCallback, useSyncExternalStore } from 'react';
+import { recall, remember } from './storage';
 
 /** One question: sent and heard by this device's clock, received and answered by the server's; epoch ms. */
 export interface ClockSample {
@@ -31,12 +32,38 @@ export function offsetOf(samples: readonly ClockSample[]): { offsetMs: number; r
   return best;
 }
 
-export function makeClock(deviceNow: () => number) {
+/** What the device's clock may differ from the steady one between two looks without having been set, ms. */
+const wanderMs = 2000;
+/** Set back by more, the device had no idea of the day: what was measured against it says nothing, ms. */
+const mostBackMs = 86_400_000;
+
+/**
+ * @param steadyNow a clock that nobody sets, such as `performance.now`; it may stand still while the device sleeps. Left
+ *   out: a device's clock that is set back takes the server's time with it until it is measured again
+ */
+export function makeClock(deviceNow: () => number, steadyNow?: () => number) {
   let from = 0;
   let to = 0;
   let since = deviceNow();
   let synced = false;
+  let lead = steadyNow ? deviceNow() - steadyNow() : 0;
   const listeners = new Set<() => void>();
+  const measures = new Set<() => void>();
+
+  /** The device's time. Set back by a person, it is met by as much more offset; ahead may be sleep, and is left. */
+  const device = (): number => {
+    const now = deviceNow();
+    if (!steadyNow) return now;
+    const present = now - steadyNow();
+    const back = lead - present;
+    lead = present;
+    if (back > wanderMs && back < mostBackMs) {
+      from += back;
+      to += back;
+      since -= back;
+    }
+    return now;
+  };
 
   const offsetAt = (device: number): number => {
     const gone = Math.max(0, device - since) * slewRate;
@@ -51,22 +78,29 @@ export function makeClock(deviceNow: () => number) {
   return {
     /** The server's time, epoch ms. */
     now: (): number => {
-      const device = deviceNow();
-      return device + offsetAt(device);
+      const at = device();
+      return at + offsetAt(at);
     },
+    /** Server minus device, ms. */
+    offset: (): number => offsetAt(device()),
     /** Takes a measured offset. */
     correct: (offsetMs: number): void => {
-      const device = deviceNow();
-      const at = offsetAt(device);
+      const now = device();
+      const at = offsetAt(now);
       if (!synced || Math.abs(offsetMs - at) > stepMs) step(offsetMs);
       else [from, to] = [at, offsetMs];
-      since = device;
+      since = now;
       synced = true;
+      measures.forEach((listener) => listener());
+    },
+    /** Takes the offset that was measured before the page was closed, until something better is known. */
+    recall: (offsetMs: number): void => {
+      if (!synced) step(offsetMs);
     },
     /** Takes the Date header of an answer, until the clock is measured: a device a day off is right at first sight. */
     rough: (serverDate: number): void => {
       if (synced) return;
-      const offset = serverDate + 500 - deviceNow();
+      const offset = serverDate + 500 - device();
       if (Math.abs(offset - to) > roughMs) step(offset);
     },
     /** Hears of steps, not of ticks. */
@@ -74,10 +108,25 @@ export function makeClock(deviceNow: () => number) {
       listeners.add(listener);
       return () => listeners.delete(listener);
     },
+    /** Hears of every measurement. */
+    onMeasured: (listener: () => void) => {
+      measures.add(listener);
+      return () => measures.delete(listener);
+    },
   };
 }
 
-export const serverClock = makeClock(() => Date.now());
+export const serverClock = makeClock(
+  () => Date.now(),
+  () => performance.now(),
+);
+
+// A page that opens without a connection counts by what was last measured: the phone's clock is as wrong as it was.
+const offsetKey = 'clock-offset';
+const recalled = Number(recall(offsetKey) ?? Number.NaN);
+if (Number.isFinite(recalled)) serverClock.recall(recalled);
+serverClock.onMeasured(() => remember(offsetKey, String(Math.round(serverClock.offset()))));
+
 /** The server's time now, epoch ms. For handlers; components use `useNow`. */
 export const serverNow = (): number => serverClock.now();
 /** An instant of this device's clock (TanStack's `dataUpdatedAt`) on the server's, epoch ms. */

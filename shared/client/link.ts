@@ -3,6 +3,7 @@ import { deadMs, quietMs } from '@/shared/contract/live';
 import { api } from './api';
 import { serverClock, serverNow } from './clock';
 import { externalStore, useStore } from './external-store';
+import { recall, remember } from './storage';
 
 export interface LinkFacts {
   /** The socket is connected. */
@@ -32,7 +33,11 @@ export function linkOf({ heardAt, lostAt }: LinkFacts, now: number): Link {
   return silent >= quietMs ? { state: 'quiet', since: heardAt } : { state: 'live', since: null };
 }
 
-let facts: LinkFacts = { connected: false, heardAt: null, lostAt: null };
+/** Nobody was heard yet. */
+const unheard: LinkFacts = { connected: false, heardAt: null, lostAt: null };
+let facts = unheard;
+/** The page was opened without a connection and shows what was kept: the link is down until the server is heard. */
+let openedWithout: LinkFacts | null = null;
 const linkStore = externalStore<Link>(linkOf(facts, 0));
 const heardStore = externalStore<number | null>(null);
 let timer: ReturnType<typeof setTimeout> | undefined;
@@ -54,6 +59,8 @@ function renew(): void {
 /** The server was heard. An answer to a call alone does not mend a broken socket. */
 export function heard(bySocket: boolean): void {
   const now = serverNow();
+  openedWithout = null;
+  keepHeard(now);
   facts = { ...facts, heardAt: now, lostAt: bySocket || facts.connected ? null : facts.lostAt };
   heardStore.set(now);
   renew();
@@ -63,14 +70,40 @@ export function connected(): void {
   heard(true);
 }
 export function lost(): void {
+  if (facts.connected && facts.heardAt !== null) {
+    heardKept = -Infinity;
+    keepHeard(facts.heardAt);
+  }
   facts = { ...facts, connected: false, lostAt: facts.lostAt ?? serverNow() };
   renew();
 }
 /** Nobody is signed in and nothing is listened to: no link, no loss. */
 export function linkIdle(): void {
-  facts = { connected: false, heardAt: null, lostAt: null };
-  heardStore.set(null);
+  facts = openedWithout ?? unheard;
+  heardStore.set(facts.heardAt);
   renew();
+}
+
+const heardKey = 'heard-at';
+const keepHeardEveryMs = 15_000;
+let heardKept = -Infinity;
+/** For a page that is opened later without a connection: since when there is none. */
+function keepHeard(now: number): void {
+  if (Math.abs(now - heardKept) < keepHeardEveryMs) return;
+  heardKept = now;
+  remember(heardKey, String(now));
+}
+
+/** The page shows what was kept on this device: the link is down, since the server was last heard by an earlier page. */
+export function linkOpenedWithout(): void {
+  const now = serverNow();
+  const last = Number(recall(heardKey) ?? Number.NaN);
+  openedWithout = {
+    connected: false,
+    heardAt: Number.isFinite(last) && last <= now ? last : now,
+    lostAt: now - graceMs,
+  };
+  linkIdle();
 }
 
 api.on({
@@ -88,17 +121,28 @@ serverClock.onStep(() => {
   renew();
 });
 
+/**
+ * Since when what a screen shows is old, server's epoch ms; null while the server is heard. An answer may be older than
+ * the last word of the server: what nobody looks at is not asked for again.
+ * @param asOf instant of the answer, server's epoch ms
+ */
+export const knownAt = ({ state, since }: Link, asOf: number): number | null =>
+  state === 'down' && since !== null ? Math.min(since, asOf) : null;
+
 /** State of the link; changes only when the state does. */
 export const useLink = (): Link => useStore(linkStore);
 /** When the server was last heard, server's epoch ms; changes with every word. */
 export const useHeardAt = (): number | null => useStore(heardStore);
 export const linkNow = (): Link => linkStore.get();
-/** Calls back when the link becomes live again. */
-export function onLive(listener: () => void): () => void {
+function onTurn(to: Link['state'], listener: () => void): () => void {
   let last = linkStore.get().state;
   return linkStore.subscribe(() => {
     const { state } = linkStore.get();
-    if (state === 'live' && last !== 'live') listener();
+    if (state === to && last !== to) listener();
     last = state;
   });
 }
+/** Calls back when the link becomes live again. */
+export const onLive = (listener: () => void): (() => void) => onTurn('live', listener);
+/** Calls back when the link goes down. */
+export const onDown = (listener: () => void): (() => void) => onTurn('down', listener);

@@ -12,6 +12,8 @@ export const endedStore = externalStore<EndedReason | null>(null);
 
 /** Somebody has signed in in this browser and not signed out since. */
 export const signedInBefore = (): boolean => recall(signedIn) !== null;
+/** Their id; null: nobody. */
+export const signedInPerson = (): string | null => recall(signedIn);
 /** Who it is; null: nobody any more. Other tabs hear of it. */
 export const rememberSignedIn = (personId: string | null): void => remember(signedIn, personId);
 

@@ -10,11 +10,19 @@ import type {
   SignInInput,
 } from '@/shared/contract/session';
 import { api, orNull } from './api';
-import { isProblem } from './api-problem';
+import { isOffline, isProblem } from './api-problem';
 import { forgetDrafts } from './draft-store';
 import { queryClient } from './query-client';
 import { roots } from './query-keys';
-import { endedStore, rememberSignedIn, returnTo, signedInBefore, signedInKey, type EndedReason } from './session-state';
+import {
+  endedStore,
+  rememberSignedIn,
+  returnTo,
+  signedInBefore,
+  signedInKey,
+  signedInPerson,
+  type EndedReason,
+} from './session-state';
 import { staleTimes } from './stale-times';
 import { useWrite } from './use-write';
 
@@ -24,8 +32,11 @@ export const sessionQuery = () =>
     queryKey: [roots.session],
     queryFn: async ({ signal }) => {
       if (!signedInBefore()) return null;
-      const session = await orNull(api.get<SessionDto>('/session', { signal }), [401]);
-      if (!session) rememberSignedIn(null);
+      const session = await present(signal);
+      if (!session) {
+        rememberSignedIn(null);
+        forgetKept();
+      } else if (signedInPerson() !== session.person.id) rememberSignedIn(session.person.id);
       // Somebody else signed in in another tab of this browser: its cookies are this tab's too.
       const last = queryClient.getQueryData<SessionDto | null>([roots.session]);
       if (last && session && last.person.id !== session.person.id) forgetOthers(queryClient);
@@ -36,6 +47,53 @@ export const sessionQuery = () =>
     staleTime: staleTimes.session,
     gcTime: Infinity,
   });
+
+/** The session by the server; where it is not reached when the page opens, as it was kept on this device. */
+async function present(signal: AbortSignal): Promise<SessionDto | null> {
+  try {
+    return await orNull(api.get<SessionDto>('/session', { signal }), [401]);
+  } catch (error) {
+    const away = isOffline(error) || (isProblem(error) && error.status >= 500);
+    if (!away || queryClient.getQueryData([roots.session]) !== undefined) throw error;
+    const kept = await openKept();
+    if (kept === null) throw error;
+    return kept;
+  }
+}
+
+// Late: nothing of it is needed where the server answers.
+const keeper = () => import('./kept/keeper');
+const openKept = (): Promise<SessionDto | null> =>
+  keeper().then(
+    ({ openWithout }) => openWithout(queryClient),
+    () => null,
+  );
+/** What this device keeps for reading without a connection goes. */
+const forgetKept = (): void =>
+  void keeper().then(
+    (part) => part.forgetKept(),
+    () => undefined,
+  );
+
+/** Keeps what is answered, so that the app can be read without a connection. Once, around the screens of a person. */
+export function useKeptAnswers(): void {
+  const personId = useSession().data?.person.id ?? null;
+  useEffect(() => {
+    if (personId === null) return;
+    let stop: (() => void) | null = null;
+    let gone = false;
+    void keeper().then(
+      ({ startKeeping }) => {
+        if (!gone) stop = startKeeping(queryClient, personId);
+      },
+      () => undefined,
+    );
+    return () => {
+      gone = true;
+      stop?.();
+    };
+  }, [personId]);
+}
 
 export const useSession = () => useQuery(sessionQuery());
 
@@ -58,10 +116,12 @@ export function useCan(capability: Capability): boolean {
 }
 
 /** Drops everything asked for but who is signed in and what the installation is. */
-const forgetOthers = (client: QueryClient): void =>
+function forgetOthers(client: QueryClient): void {
   client.removeQueries({
     predicate: ({ queryKey }) => queryKey[0] !== roots.session && queryKey[0] !== roots.frontDoor,
   });
+  forgetKept();
+}
 
 function begin(client: QueryClient, session: SessionDto): void {
   const last = client.getQueryData(sessionQuery().queryKey);
@@ -149,6 +209,7 @@ export function sessionLost(reason: EndedReason): void {
   if (!queryClient.getQueryData(sessionQuery().queryKey)) return;
   returnTo.keep(location.pathname + location.search);
   rememberSignedIn(null);
+  forgetKept();
   endedStore.set(reason);
   queryClient.setQueryData(sessionQuery().queryKey, null);
 }

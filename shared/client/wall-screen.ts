@@ -6,7 +6,7 @@ import { api, orNull } from './api';
 import { serverNow } from './clock';
 import { onLive, useLink } from './link';
 import { startLive } from './live';
-import { newBuildThere } from './new-build';
+import { newBuildThere, takeNewBuild } from './new-build';
 import { queryClient } from './query-client';
 import { roots } from './query-keys';
 import { staleTimes } from './stale-times';
@@ -69,7 +69,7 @@ export function useNewBuildReload(): void {
     () =>
       onLive(() => {
         void newBuildThere().then((yes) => {
-          if (yes) location.reload();
+          if (yes) void takeNewBuild();
         });
       }),
     [],

@@ -1,5 +1,5 @@
 import * as z from 'zod/mini';
-import { id, instant, optionalText, reason, type Instant, type PersonRef } from './common';
+import { id, instant, optionalText, reason, text, type Instant, type PersonRef } from './common';
 import type { OddSeen, Reckoning } from '@/calc/live-types';
 import type { Band, CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
 import { typedGroupVolts } from './group-volts';
@@ -51,6 +51,10 @@ export const answerCheckSchema = z.object({
   /** 'yes' lets the charge go on, 'no' rules it out until it is changed. */
   answer: z.enum(['yes', 'no']),
   note: z.optional(optionalText('The note', 200)),
+  /** When it was answered, where the answer had to wait for a connection. */
+  at: z.optional(instant),
+  /** The question as it was read then: a late answer counts for no other. */
+  asked: z.optional(text('The question', 300)),
 });
 export type AnswerCheckInput = z.infer<typeof answerCheckSchema>;
 
@@ -65,7 +69,8 @@ export const currentOffSchema = z.object({ at: atNow });
 /** The clips were moved to the next step of the charge. */
 export const nextStepSchema = z.object({ at: atNow });
 export const handOverSchema = z.object({ personId: id });
-export const lookInSchema = z.object({ note: z.optional(optionalText('The note', 200)) });
+export const lookInSchema = z.object({ note: z.optional(optionalText('The note', 200)), at: atNow });
+export type LookInInput = z.infer<typeof lookInSchema>;
 
 const readingShape = {
   at: atNow,

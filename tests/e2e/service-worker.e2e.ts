@@ -53,10 +53,25 @@ describeInBrowser('the service worker in Chromium', () => {
     ]);
   });
 
-  test('keeps no file: with the server away nothing old is shown as if it were new', async () => {
-    expect(await visitor.page.evaluate(() => caches.keys())).toEqual([]);
+  test('keeps the files of one build and no number: without the server the app opens, and no call is answered', async () => {
+    const kept = await visitor.page.evaluate(async () => {
+      const names = await caches.keys();
+      const files = await Promise.all(names.map(async (name) => (await caches.open(name)).keys()));
+      return { names, files: files.flat().map(({ url }) => new URL(url).pathname) };
+    });
+    expect(kept.names).toEqual([expect.stringMatching(/^bidewell-shell-[0-9a-f]{16}$/)]);
+    expect(kept.files).toContain('/');
+    expect(kept.files.filter((file) => file.startsWith('/api'))).toEqual([]);
     await visitor.context.setOffline(true);
-    await expect(visitor.page.goto(`${server.url}/estimate`)).rejects.toThrow(/ERR_INTERNET_DISCONNECTED|ERR_FAILED/);
+    await visitor.page.goto(`${server.url}/estimate`);
+    await expect.poll(() => visitor.page.locator('#root').innerText()).toMatch(/\p{L}{3,}/u);
+    const call = await visitor.page.evaluate(() =>
+      fetch('/api/front-door').then(
+        (answer) => `answered ${answer.status}`,
+        () => 'not reached',
+      ),
+    );
+    expect(call).toBe('not reached');
     await visitor.context.setOffline(false);
     await visitor.page.goto(`${server.url}/estimate`);
   });

@@ -99,7 +99,9 @@ async function startCharge(server: TestServer, technician: TestAgent, spareId: s
   let charge = await bodyOf<ChargeDto>(kept, 201);
   for (const { code, by } of charge.checks)
     if (by === 'person')
-      charge = await bodyOf<ChargeDto>(technician.post(`/api/charges/${charge.id}/checks`, { code, answer: 'yes' }));
+      charge = await bodyOf<ChargeDto>(
+        technician.post(`/api/charges/${charge.id}/checks`, { code, answer: 'yes' }).set('Idempotency-Key', newKey()),
+      );
   server.clock.advance(1000);
   const start = technician
     .post(`/api/charges/${charge.id}/start`)

@@ -175,11 +175,14 @@ function useSaveStep(
 ): NextStepPlaces {
   const styles = useStyles();
   const count = charge.groups.length;
+  const decide = `${count === 1 ? 'The group decides. Type it' : count === 2 ? 'Both groups decide. Type each' : `All ${count} groups decide. Type each`} with three decimals.`;
   const why = offline
-    ? 'Saving the check needs the connection. What is typed is kept.'
+    ? all
+      ? 'Without a connection it is kept on this device and judged when it is back.'
+      : decide
     : all
       ? null
-      : `${count === 1 ? 'The group decides. Type it' : count === 2 ? 'Both groups decide. Type each' : `All ${count} groups decide. Type each`} with three decimals.`;
+      : decide;
   const again = () => {
     charge.groups.forEach((_, group) => form.setValue(`groupVolts.${group}`, '', { shouldDirty: true }));
     form.setFocus('groupVolts.0');
@@ -192,16 +195,23 @@ function useSaveStep(
     children: (
       <>
         <Button
-          title={all && outside ? 'Plan the top-up' : all ? 'Save it: in tolerance' : 'Save the check'}
-          onPress={all && outside ? onTopUp : onSave}
+          title={
+            offline
+              ? 'Keep the check on this device'
+              : all && outside
+                ? 'Plan the top-up'
+                : all
+                  ? 'Save it: in tolerance'
+                  : 'Save the check'
+          }
+          onPress={all && outside && !offline ? onTopUp : onSave}
           busy={busy}
-          disabled={offline}
           describedBy={why || says ? noteId : undefined}
         />
         {all && outside ? (
           <View style={styles.links}>
             <Link title="Measure again" onPress={again} />
-            <Link title="Save it, plan later" onPress={onSave} disabled={offline || busy} align="right" />
+            {offline ? null : <Link title="Save it, plan later" onPress={onSave} disabled={busy} align="right" />}
           </View>
         ) : null}
       </>

@@ -5,7 +5,7 @@ import type { PersonDto } from '@/shared/contract/people';
 import type { CardClock } from './card-model';
 import type { LiveAct } from './live-acts';
 import type { ChargeActs, LiveSheet, LiveSheetsProps } from './live-sheets';
-import type { WaitingReading } from './waiting-readings';
+import type { WaitingActs, WaitingItem } from '../waiting/waiting-items';
 
 /** What the live screen and its parts show and do. */
 export interface LiveScreenProps {
@@ -23,14 +23,15 @@ export interface LiveScreenProps {
   sheet: LiveSheet | null;
   stopDraft: LiveSheetsProps['stopDraft'];
   endDraft: LiveSheetsProps['endDraft'];
-  waiting: readonly WaitingReading[];
+  /** What of this charge waits on this device, and what can be done with it. */
+  waiting: readonly WaitingItem[];
+  waitingActs: WaitingActs;
   /** After a check outside the tolerance: the soonest way to put it right. */
   topUp: { option: PlanOption | null; ruledOut: string | null } | null;
   onBack: () => void;
   onGo: (path: string) => void;
   onAct: (act: LiveAct) => void;
   onSheet: (sheet: LiveSheet | null) => void;
-  onRemoveWaiting: (key: string) => void;
 }
 
 /** Its check let it go: the verdict leads, not a time. */

@@ -8,6 +8,7 @@ import { Rule } from '../primitives/rule';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
+import { WaitingHere } from '../waiting/waiting-here';
 import { isUnderWay } from './card-model';
 import { CardRibbon } from './card-ribbon';
 import { ReadingLog } from './charge-log';
@@ -19,12 +20,12 @@ import { LiveHead, StageLine } from './live-head';
 import { LearnedPanel } from './learned-panel';
 import { ClipOnLine, CurrentLine, LookInLine } from './live-lines';
 import { isProven, type LiveScreenProps } from './live-props';
+import { OfflineCaution } from './offline-caution';
 import { OddSeenCallOut } from './odd-seen-call-out';
 import { ReadyFacts } from './ready-panel';
 import { RestLine } from './rest-line';
-import { SeenAndPlan } from './seen-and-plan';
+import { lastReading, SeenAndPlan } from './seen-and-plan';
 import { TopUpCallOut } from './top-up-call-out';
-import { OfflineCaution, WaitingReadings } from './waiting-readings';
 
 const DriftLine = lazy(() => import('./drift-line').then((module) => ({ default: module.DriftLine })));
 
@@ -97,18 +98,19 @@ function Drift({ charge, type, at }: LiveScreenProps) {
 }
 
 /** What the figures are from while the link is down, what waits on this device, and what does not reach it. */
-function WhileOffline({ charge, at, knownAt, waiting, onRemoveWaiting }: LiveScreenProps) {
+function WhileOffline({ charge, at, knownAt, waiting, waitingActs }: LiveScreenProps) {
   const { zone, marks } = useFormats();
   const device = useBreakpoint() === 'phone' ? 'phone' : 'device';
+  const readings = waiting.filter(({ kind }) => kind === 'reading').length;
   const from = charge.lastReadingAt
     ? `From the reading at ${moment(Date.parse(charge.lastReadingAt), zone, at.now, marks)}.`
     : 'From the plan.';
   const below =
-    waiting.length === 0
+    readings === 0
       ? ''
-      : waiting.length === 1
+      : readings === 1
         ? ' The reading below is not in it yet.'
-        : ` The ${waiting.length} readings below are not in it yet.`;
+        : ` The ${readings} readings below are not in it yet.`;
   return (
     <>
       {knownAt === null ? null : (
@@ -116,15 +118,23 @@ function WhileOffline({ charge, at, knownAt, waiting, onRemoveWaiting }: LiveScr
           {`${from} The clock goes on here.${below}`}
         </Txt>
       )}
-      <WaitingReadings charge={charge} waiting={waiting} now={at.now} device={device} onRemove={onRemoveWaiting} />
+      <WaitingHere items={waiting} last={lastReading(charge)} now={at.now} device={device} {...waitingActs} />
       {knownAt !== null && isUnderWay(charge) ? <OfflineCaution charge={charge} now={at.now} device={device} /> : null}
     </>
   );
 }
 
+/** As on the server: a visit so long before a look-in counts for it, ms. */
+const lookInWindowMs = 10 * 60_000;
+
 /** What asks for somebody: a top-up, a hand, a look-in, a time. */
-function Asks({ charge, at, knownAt, acts, topUp, onSheet }: LiveScreenProps) {
+function Asks({ charge, at, knownAt, waiting, acts, topUp, onSheet }: LiveScreenProps) {
   const offline = knownAt !== null;
+  // A visit that waits here, for the look-in that is asked for: it counts from ten minutes before.
+  const due = charge.nextLookInAt === null ? Infinity : Date.parse(charge.nextLookInAt) - lookInWindowMs;
+  const lookedIn = waiting.some(
+    ({ kind, refused, input }) => kind === 'look-in' && refused === null && Date.parse(input.at) >= due,
+  );
   const lines = {
     charge,
     now: at.now,
@@ -147,7 +157,7 @@ function Asks({ charge, at, knownAt, acts, topUp, onSheet }: LiveScreenProps) {
         onOff={() => acts.currentOff()}
         onOffEarlier={() => onSheet('off-since')}
       />
-      <LookInLine {...lines} onDone={acts.lookIn} />
+      {lookedIn ? null : <LookInLine {...lines} disabled={false} describedBy={undefined} onDone={acts.lookIn} />}
       <CurrentLine {...lines} onOffAt={() => onSheet('off-since')} />
       <RestLine charge={charge} now={at.now} />
       <ClipOnLine {...lines} onChange={() => onSheet('clip-on')} />

@@ -39,8 +39,14 @@ export const emptyLog = (groups: number): LogValues => ({
   reason: '',
 });
 
+/** What was read, of a reading that is kept or still waits on this device. */
+export type AsRead = Pick<
+  ReadingDto,
+  'at' | 'terminalVolts' | 'amps' | 'celsius' | 'groupVolts' | 'meterId' | 'takenAt'
+>;
+
 /** A reading as it was typed, to be corrected. */
-export function logOf(reading: ReadingDto, groups: number, zone: string, marks: LocaleMarks): LogValues {
+export function logOf(reading: AsRead, groups: number, zone: string, marks: LocaleMarks): LogValues {
   const text = (value: number | null) => (value === null ? '' : String(value).replace('.', marks.decimal));
   return {
     terminalVolts: text(reading.terminalVolts),
@@ -127,7 +133,7 @@ export const logSchema = ({
 
 /** A correction keeps the day of its reading: the time of day nearest to when it was. */
 export const correctedInstant =
-  (reading: ReadingDto, zone: string) =>
+  (reading: Pick<AsRead, 'at'>, zone: string) =>
   (text: string): number | null => {
     const minutes = parseTimeOfDay(text);
     if (minutes === null) return null;

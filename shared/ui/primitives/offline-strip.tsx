@@ -2,6 +2,7 @@ import { View } from 'react-native';
 import { Icon } from '../icons/icon';
 import { makeStyles } from '../theme/make-styles';
 import { web } from '../theme/web-props';
+import { Link } from './link';
 import { Span, Txt } from './txt';
 
 /** Under the header while there is no connection: since when, and how many readings wait on this device. */
@@ -9,10 +10,13 @@ export function OfflineStrip({
   since,
   waiting,
   device = 'phone',
+  onSee,
 }: {
   since: string;
   waiting: number;
   device?: 'phone' | 'device';
+  /** Opens the list of what waits. */
+  onSee?: () => void;
 }) {
   const styles = useStyles();
   return (
@@ -23,6 +27,7 @@ export function OfflineStrip({
         {waiting > 0 ? <Span bold>{`${waiting} waiting`}</Span> : null}
         {waiting > 0 ? '.' : ''}
       </Txt>
+      {onSee ? <Link title="See" label="See what waits here" tone="onInk" tight align="right" onPress={onSee} /> : null}
     </View>
   );
 }

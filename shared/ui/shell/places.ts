@@ -103,6 +103,7 @@ const titles: Readonly<Record<string, string>> = {
   'work/[id]/edit': 'Change other work',
   more: 'More',
   me: 'Name and password',
+  waiting: 'Waiting on this device',
   alerts: 'Alerts',
   waits: 'Waits',
   'repairs/index': 'Repairs',

@@ -2,8 +2,8 @@ import { render, screen } from '@testing-library/react';
 import type { ReactElement } from 'react';
 import { ClientProvider } from '@/shared/client/client-provider';
 import { queryClient } from '@/shared/client/query-client';
-import { readingQueue } from '@/shared/client/reading-queue';
 import { rememberSignedIn } from '@/shared/client/session-state';
+import { waitingQueue } from '@/shared/client/waiting/waiting';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { FormatsProvider } from '@/shared/ui/format/formats';
 import { ToastProvider } from '@/shared/ui/primitives/toast';
@@ -25,7 +25,7 @@ export function emptyDevice(): void {
   localStorage.clear();
   sessionStorage.clear();
   rememberSignedIn('p1');
-  readingQueue.belongTo(null);
+  void waitingQueue.belongTo('p1');
 }
 
 /** The API as a technician meets it with this charge on the bench; 404 as an answer takes it away. */

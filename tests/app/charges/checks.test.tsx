@@ -66,7 +66,7 @@ describe('the checks before clipping on', () => {
     draw(<Checks />);
     fireEvent.click(await press('Yes to isolation. Isolation'));
     await press('Yes to polarity. Polarity');
-    expect(server.writes()[0]!.body).toEqual({ code: 'isolation', answer: 'yes' });
+    expect(server.writes()[0]!.body).toMatchObject({ code: 'isolation', answer: 'yes', asked: 'Isolation?' });
     expect(screen.getByText(/^Ines .*13:38$/)).toBeTruthy();
     fireEvent.click(await press('Change the answer to isolation'));
     await press('No to isolation. Isolation');

@@ -3,7 +3,7 @@ import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Live from '@/app/(workshop)/charges/[id]/index';
 import { lost, connected } from '@/shared/client/link';
-import { readingQueue } from '@/shared/client/reading-queue';
+import { waitingQueue } from '@/shared/client/waiting/waiting';
 import { charge, iso, reading } from '../../shared/ui/charge/charges';
 import { draw, emptyDevice, input, press, problem, reasonOf, serverWith } from './bench-of';
 
@@ -269,17 +269,21 @@ describe('without a connection', () => {
   it('logging stays, hold and stop say that they need it, and readings that wait are listed with their removal', async () => {
     serverWith(charge('charging', { ...mine, nextLookInAt: iso('13:50'), lastReadingAt: iso('13:36') }));
     localStorage.setItem(
-      'bw.readings.p1',
+      'bw.list.waiting.p1',
       JSON.stringify([
         {
+          kind: 'reading',
           key: 'k1',
           chargeId: 'c1',
+          title: 'R-2411',
+          offsetMs: 0,
+          keptAt: Date.now(),
           input: { at: iso('13:40'), terminalVolts: 11.64, amps: 10, celsius: 24 },
           refused: null,
         },
       ]),
     );
-    readingQueue.belongTo('p1');
+    await waitingQueue.belongTo('p1');
     draw(<Live />);
     await press('Hold');
     goOffline();
@@ -290,6 +294,6 @@ describe('without a connection', () => {
     expect(screen.getByText(/^Alerts do not reach this/)).toBeTruthy();
     fireEvent.click(await press(/^Remove the reading of/));
     await waitFor(() => expect(screen.queryByText(/^Waiting on this/)).toBeNull());
-    expect(readingQueue.store.get()).toEqual([]);
+    expect(waitingQueue.store.get()).toEqual([]);
   });
 });

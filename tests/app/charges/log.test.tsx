@@ -2,7 +2,7 @@ import { fireEvent, screen, waitFor } from '@testing-library/react';
 import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Log from '@/app/(workshop)/charges/[id]/log';
-import { readingQueue } from '@/shared/client/reading-queue';
+import { waitingQueue } from '@/shared/client/waiting/waiting';
 import { charge, reading } from '../../shared/ui/charge/charges';
 import { draw, emptyDevice, input, press, problem, serverWith } from './bench-of';
 
@@ -78,13 +78,12 @@ describe('logging a reading', () => {
     server.answers['POST /api/charges/c1/readings'] = () => {
       throw new TypeError('Failed to fetch');
     };
-    readingQueue.belongTo('p1');
     draw(<Log />);
     await fill({ Current: '10.0' });
     fireEvent.click(await press(/^(Log it|Keep it on this device)$/));
     expect(await screen.findAllByText('Kept on this device until the connection is back.')).not.toEqual([]);
-    expect(readingQueue.store.get()).toMatchObject([{ chargeId: 'c1', input: { amps: 10 }, refused: null }]);
-    expect(Date.parse(readingQueue.store.get()[0]!.input.at)).toBeGreaterThan(0);
+    expect(waitingQueue.store.get()).toMatchObject([{ chargeId: 'c1', input: { amps: 10 }, refused: null }]);
+    expect(Date.parse(waitingQueue.store.get()[0]!.input.at)).toBeGreaterThan(0);
   });
 
   it('corrects a reading from what it was, with the reason, and not one that somebody else may correct only', async () => {

@@ -219,7 +219,10 @@ export async function answered(bench: Bench, charge: ChargeDto, role: Role = 'te
   let present = charge;
   for (const item of charge.checks) {
     if (item.by !== 'person') continue;
-    const answer = await bench.as(role).post(`/api/charges/${charge.id}/checks`, { code: item.code, answer: 'yes' });
+    const answer = await bench
+      .as(role)
+      .post(`/api/charges/${charge.id}/checks`, { code: item.code, answer: 'yes' })
+      .set('Idempotency-Key', key());
     expect(answer.status, JSON.stringify(answer.body)).toBe(200);
     present = answer.body as ChargeDto;
   }

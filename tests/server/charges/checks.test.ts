@@ -1,7 +1,7 @@
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import type { CheckCode, CheckItemDto } from '@/shared/contract/charge';
 import { Channel } from '@/server/entities/channel';
-import { act, answered, did, hour, kept, makeBench, running, seen, type Bench } from './bench';
+import { act, answered, did, hour, kept, key, makeBench, running, seen, type Bench } from './bench';
 
 let bench: Bench;
 beforeEach(async () => {
@@ -13,7 +13,10 @@ const item = (charge: { checks: CheckItemDto[] }, code: CheckCode): CheckItemDto
   charge.checks.find((one) => one.code === code)!;
 const answer = (id: string, code: CheckCode, given: 'yes' | 'no', note?: string) => {
   bench.server.clock.advance(1);
-  return bench.as('technician').post(`/api/charges/${id}/checks`, { code, answer: given, note });
+  return bench
+    .as('technician')
+    .post(`/api/charges/${id}/checks`, { code, answer: given, note })
+    .set('Idempotency-Key', key());
 };
 
 describe('the checks before clipping on', () => {
@@ -241,7 +244,8 @@ describe('the checks before clipping on', () => {
     const charge = await kept(bench, { spareId: await bench.spare('S-0417') });
     const refused = await bench
       .as('technician')
-      .post(`/api/charges/${charge.id}/checks`, { code: 'luck', answer: 'yes' });
+      .post(`/api/charges/${charge.id}/checks`, { code: 'luck', answer: 'yes' })
+      .set('Idempotency-Key', key());
     expect(refused.status).toBe(400);
     expect((refused.body as { fields: object }).fields).toHaveProperty('code');
   });

@@ -139,7 +139,8 @@ test('who comes too late is told who won and when, in the workshop’s time, wit
   // An act without a revision, and one that does not fit the stage, hear it too.
   const late = await bench
     .as('technician')
-    .post(`/api/charges/${charge.id}/checks`, { code: 'isolation', answer: 'no' });
+    .post(`/api/charges/${charge.id}/checks`, { code: 'isolation', answer: 'no' })
+    .set('Idempotency-Key', key());
   expect(late.status).toBe(409);
   expect(detail(late)).toBe('R-1 is held. Its checks are closed. Foreman of own held it at 10:32.');
   expect(changed(late)).toMatchObject({ did: 'held it' });

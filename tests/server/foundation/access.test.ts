@@ -117,6 +117,7 @@ describe('the routes', () => {
       'POST /api/bench-plan/move',
       'POST /api/bench-plan/undo/:id',
       'POST /api/charges',
+      'POST /api/charges/:id/checks',
       'POST /api/charges/:id/current-off',
       'POST /api/charges/:id/fit',
       'POST /api/charges/:id/hold',

@@ -145,12 +145,24 @@ describe('a write with an Idempotency-Key', () => {
     expect(await countThings()).toBe(1);
   });
 
-  it('is forgotten after 24 h', async () => {
+  it('loses its answer after 24 h and is itself forgotten after 45 days', async () => {
+    const kept = async () =>
+      (await server.deps.dataSource.manager.find(IdempotencyKey, { order: { createdAt: 'ASC' } })).map(
+        ({ key, status }) => [key.at(-1), status],
+      );
     await post({ name: 'R1' }, 'key-00000001');
     server.clock.advance(24 * 3600_000 + 1);
     await post({ name: 'R2' }, 'key-00000002');
-    const kept = await server.deps.dataSource.manager.find(IdempotencyKey);
-    expect(kept.map(({ key }) => key)).toEqual(['key-00000002']);
+    expect(await kept()).toEqual([
+      ['1', 0],
+      ['2', 201],
+    ]);
+    server.clock.advance(44 * 24 * 3600_000);
+    await post({ name: 'R3' }, 'key-00000003');
+    expect(await kept()).toEqual([
+      ['2', 0],
+      ['3', 201],
+    ]);
   });
 });
 

@@ -120,3 +120,54 @@ describe('the corrected clock', () => {
     expect(clock.now()).toBe(state.now);
   });
 });
+
+describe('a page without a connection, on a phone that is 7 min off', () => {
+  const off = 7 * 60_000;
+  /** The phone's clock is what is set by hand; the steady one runs by itself and stands still in sleep. */
+  function phone() {
+    const state = { device: 1_000_000_000 + off, steady: 5000 };
+    const clock = makeClock(
+      () => state.device,
+      () => state.steady,
+    );
+    const pass = (ms: number, asleep = false) => {
+      state.device += ms;
+      if (!asleep) state.steady += ms;
+    };
+    return { state, clock, pass };
+  }
+
+  it('counts by what was measured before the page was closed', () => {
+    const { clock } = phone();
+    clock.recall(-off);
+    expect(clock.now()).toBe(1_000_000_000);
+    expect(clock.offset()).toBe(-off);
+  });
+
+  it('believes what is measured over what it recalls, and recalls nothing after that', () => {
+    const { clock } = phone();
+    clock.recall(-2 * off);
+    clock.correct(-off);
+    clock.recall(-2 * off);
+    expect(clock.now()).toBe(1_000_000_000);
+  });
+
+  it('goes on without a jump where the phone is set right by 7 min back', () => {
+    const { state, clock, pass } = phone();
+    clock.correct(-off);
+    pass(60_000);
+    expect(clock.now()).toBe(1_000_060_000);
+    state.device -= off;
+    expect(clock.now()).toBe(1_000_060_000);
+    pass(30_000);
+    expect([clock.now(), clock.offset()]).toEqual([1_000_090_000, 0]);
+  });
+
+  it('goes on over 8 h of sleep, in which the steady clock stood still', () => {
+    const { clock, pass } = phone();
+    clock.correct(-off);
+    clock.now();
+    pass(8 * 3600_000, true);
+    expect(clock.now()).toBe(1_000_000_000 + 8 * 3600_000);
+  });
+});

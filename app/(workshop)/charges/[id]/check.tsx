@@ -1,18 +1,19 @@
 import { useLocalSearchParams, useRouter, type Href } from 'expo-router';
-import { useRef } from 'react';
+import { useRef, useState } from 'react';
 import { isConflict, isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { actProblem } from '@/shared/client/charge-acts';
-import { useCharge, useRestCheck } from '@/shared/client/charges';
+import { useCharge } from '@/shared/client/charges';
 import { useNow } from '@/shared/client/clock';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useModuleType } from '@/shared/client/module-types';
 import { useSpare } from '@/shared/client/spares';
+import { useWaiting } from '@/shared/client/waiting/waiting';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { restCheckSchemaFor } from '@/shared/contract/rest-check';
 import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
-import type { CheckValues } from '@/shared/ui/charge/check-form';
+import { checkOf, emptyCheck } from '@/shared/ui/charge/check-form';
 import { CheckScreen } from '@/shared/ui/charge/check-screen';
 import { topUpPath } from '@/shared/ui/charge/top-up';
 import { clock } from '@/shared/ui/format/clock';
@@ -25,9 +26,9 @@ import { Screen } from '@/shared/ui/screen/screen';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
-/** The check after the rest: group voltages in, judged as they are typed. */
+/** The check after the rest: group voltages in, judged as they are typed; `?waiting=` one that is not sent yet. */
 export default function Check() {
-  const { id } = useLocalSearchParams<{ id: string }>();
+  const { id, waiting } = useLocalSearchParams<{ id: string; waiting?: string }>();
   const router = useRouter();
   const query = useCharge(id);
   const { zone, marks } = useFormats();
@@ -35,7 +36,9 @@ export default function Check() {
   const back = () => (router.canGoBack() ? router.back() : router.replace(`/charges/${id}` as Href));
   const charge = query.data;
   if (charge && (charge.stage === 'resting' || charge.stage === 'check-due'))
-    return <Form charge={charge} now={now} onBack={back} onRead={() => void query.refetch()} />;
+    return (
+      <Form charge={charge} waitingKey={waiting ?? null} now={now} onBack={back} onRead={() => void query.refetch()} />
+    );
   return (
     <Screen single header={<HeaderBar title="Check after rest" onBack={back} clock={clock(now, zone, marks)} />}>
       {charge ? (
@@ -62,35 +65,56 @@ export default function Check() {
 
 function Form({
   charge,
+  waitingKey,
   now,
   onBack,
   onRead,
 }: {
   charge: ChargeDto;
+  /** One that waits on this device and is typed anew. */
+  waitingKey: string | null;
   now: number;
   onBack: () => void;
   onRead: () => void;
 }) {
   const router = useRouter();
   const toast = useToast();
+  const { marks } = useFormats();
   const offline = useLink().state === 'down';
   const meters = useMeters().data ?? [];
   const type = useModuleType(charge.moduleTypeId).data;
   const spare = useSpare(charge.spare.id).data;
-  const save = useRestCheck();
+  const { waiting, write, replace } = useWaiting(charge.id);
+  const [anew] = useState(() => {
+    const found = waiting.find((one) => one.key === waitingKey);
+    return found?.kind === 'rest-check' ? found : null;
+  });
   const wantsTopUp = useRef(false);
   const window = { ...charge, groupsInSeries: charge.groups.length };
-  const initial: CheckValues = { groupVolts: charge.groups.map(() => ''), celsius: '', meterId: charge.meterId };
+  const initial = anew ? checkOf(anew.input, charge.groups.length, marks) : emptyCheck(charge);
   const f = useContractForm({
     schema: restCheckSchemaFor(window, charge.toleranceVolts),
     initial,
-    draft: `check.${charge.id}`,
+    draft: anew ? `waiting.${anew.key}` : `check.${charge.id}`,
     send: async (output) => {
-      const checked = await save.mutateAsync({ id: charge.id, rev: charge.rev, ...output }).catch((error: unknown) => {
+      const seen = { rev: charge.rev, checks: charge.restChecks.length };
+      if (anew && waiting.some(({ key }) => key === anew.key)) {
+        await replace(anew.key, { ...seen, input: { ...output, at: output.at ?? anew.input.at } });
+        toast({ text: 'Kept anew. It is sent when the connection is there.' });
+        router.replace(`/charges/${charge.id}` as Href);
+        return;
+      }
+      const draft = { kind: 'rest-check', chargeId: charge.id, title: charge.title, ...seen, input: output } as const;
+      const checked = await write(draft).catch((error: unknown) => {
         // Somebody else was first: the screen shows the charge as it stands.
         if (isConflict(error)) onRead();
         throw error;
       });
+      if (checked === null) {
+        toast({ text: 'The check is kept on this device until the connection is back.' });
+        router.replace(`/charges/${charge.id}` as Href);
+        return;
+      }
       const within = checked.restChecks.at(-1)?.verdict.within ?? false;
       if (within) toast({ text: `${charge.title} is ready.` });
       // Back leads to the charge and not into this form again.

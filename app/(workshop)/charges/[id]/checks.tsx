@@ -3,15 +3,17 @@ import { useState } from 'react';
 import { View } from 'react-native';
 import { isConflict, isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { actProblem } from '@/shared/client/charge-acts';
-import { useAnswerCheck, useCharge, useStartCharge } from '@/shared/client/charges';
+import { useCharge, useStartCharge } from '@/shared/client/charges';
 import { useNow } from '@/shared/client/clock';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
 import { useLastMeter } from '@/shared/client/last-meter';
 import { useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useModuleType } from '@/shared/client/module-types';
+import { useMember } from '@/shared/client/session';
 import { useAddSpareReading } from '@/shared/client/spares';
-import type { ChargeDto, CheckCode } from '@/shared/contract/charge';
+import { useWaiting, useWaitingWrite } from '@/shared/client/waiting/waiting';
+import type { ChargeDto, CheckCode, CheckItemDto } from '@/shared/contract/charge';
 import { spareReadingSchemaFor } from '@/shared/contract/spare';
 import { channelsOf, isToCome } from '@/shared/ui/charge/card-model';
 import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
@@ -30,6 +32,8 @@ import { useToast } from '@/shared/ui/primitives/toast';
 import { Columns } from '@/shared/ui/screen/columns';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
+import { WaitingRefused } from '@/shared/ui/waiting/waiting-refused';
+import { withWaitingAnswers } from '@/shared/ui/waiting/waiting-items';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
@@ -71,7 +75,21 @@ function Sheet({
   const { zone, marks } = useFormats();
   const offline = useLink().state === 'down';
   const type = useModuleType(charge.moduleTypeId).data;
-  const answer = useAnswerCheck();
+  const { person } = useMember();
+  const here = useWaiting(charge.id);
+  const checks = withWaitingAnswers(charge.checks, here.waiting, person);
+  const answer = useWaitingWrite();
+  const give = (item: CheckItemDto, given: 'yes' | 'no') =>
+    answer.mutate(
+      {
+        kind: 'answer',
+        chargeId: charge.id,
+        title: charge.title,
+        said: `${item.title}: ${item[given]}`,
+        input: { code: item.code, answer: given, asked: item.question },
+      },
+      { onSuccess: () => setChanging(null) },
+    );
   const start = useStartCharge();
   const [changing, setChanging] = useState<CheckCode | null>(null);
   const [reading, setReading] = useState(false);
@@ -128,22 +146,38 @@ function Sheet({
     >
       <Columns
         work={
-          <CheckList
-            checks={charge.checks}
-            changing={changing}
-            now={now}
-            busy={answer.isPending}
-            disabled={offline}
-            problem={answer.error ? sentenceOf(answer.error) : null}
-            closed={closed}
-            onChange={(code) => {
-              answer.reset();
-              setChanging(code);
-            }}
-            onAnswer={(code, given) =>
-              answer.mutate({ id: charge.id, code, answer: given }, { onSuccess: () => setChanging(null) })
-            }
-          />
+          <>
+            {here.waiting.map((item) => (
+              <WaitingRefused
+                key={item.key}
+                item={item}
+                now={now}
+                onRemove={(key) => void here.remove(key)}
+                onSettle={(key, at) => void here.settle(key, at)}
+                onEdit={(one) => {
+                  if (one.kind === 'answer') setChanging(one.input.code);
+                  void here.remove(one.key);
+                }}
+              />
+            ))}
+            <CheckList
+              checks={checks}
+              changing={changing}
+              now={now}
+              busy={answer.isPending}
+              disabled={false}
+              problem={answer.error ? sentenceOf(answer.error) : null}
+              closed={closed}
+              onChange={(code) => {
+                answer.reset();
+                setChanging(code);
+              }}
+              onAnswer={(code, given) => {
+                const item = charge.checks.find((one) => one.code === code);
+                if (item) give(item, given);
+              }}
+            />
+          </>
         }
         side={
           <>

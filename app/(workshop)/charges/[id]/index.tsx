@@ -4,13 +4,13 @@ import { useChargeActs } from '@/shared/client/charge-acts';
 import { useCharge } from '@/shared/client/charges';
 import { serverTimeOf, useNow } from '@/shared/client/clock';
 import { useDraft } from '@/shared/client/drafts';
-import { useLink } from '@/shared/client/link';
+import { knownAt, useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useModuleType } from '@/shared/client/module-types';
 import { usePeople } from '@/shared/client/people';
 import { usePlan } from '@/shared/client/plans';
-import { useReadingQueue } from '@/shared/client/reading-queue';
 import { useCan, useMember } from '@/shared/client/session';
+import { useWaiting } from '@/shared/client/waiting/waiting';
 import { useWorkshop } from '@/shared/client/workshop';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
@@ -24,6 +24,7 @@ import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
+import { editPath } from '@/shared/ui/waiting/waiting-items';
 import { useState } from 'react';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
@@ -87,7 +88,7 @@ function Live({
   const meters = useMeters().data ?? [];
   const workshop = useWorkshop().data;
   const type = useModuleType(charge.moduleTypeId).data;
-  const queue = useReadingQueue(charge.id);
+  const here = useWaiting(charge.id);
   const plan = usePlan(isOutside(charge) ? topUpRequest(charge) : null);
   const go = (path: string) => router.push(path as Href);
   const open = (next: LiveSheet) => {
@@ -106,7 +107,7 @@ function Live({
     <LiveScreen
       charge={charge}
       at={at}
-      knownAt={link.state === 'down' ? link.since : null}
+      knownAt={knownAt(link, at.asOf)}
       lagLimitVolts={workshop === undefined ? undefined : workshop.lagLimitMillivolts / 1000}
       type={type}
       people={people}
@@ -116,13 +117,17 @@ function Live({
       sheet={sheet}
       stopDraft={stopDraft}
       endDraft={endDraft}
-      waiting={queue.waiting}
+      waiting={here.waiting}
+      waitingActs={{
+        onRemove: (key) => void here.remove(key),
+        onSettle: (key, when) => void here.settle(key, when),
+        onEdit: (item) => go(editPath(item) ?? `/charges/${charge.id}`),
+      }}
       topUp={isOutside(charge) ? soonestTopUp(plan.data?.plan) : null}
       onBack={onBack}
       onGo={go}
       onAct={act}
       onSheet={(next) => (next === null ? setSheet(null) : open(next))}
-      onRemoveWaiting={queue.remove}
     />
   );
 }

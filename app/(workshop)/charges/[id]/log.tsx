@@ -4,10 +4,11 @@ import { isConflict, isProblem, sentenceOf } from '@/shared/client/api-problem';
 import { useCharge, useCorrectReading } from '@/shared/client/charges';
 import { serverNow, serverTimeOf, useNow } from '@/shared/client/clock';
 import { useContractForm, wrongSentence } from '@/shared/client/forms';
-import { useLink } from '@/shared/client/link';
+import { knownAt, useLink } from '@/shared/client/link';
 import { useMeters } from '@/shared/client/meters';
 import { useModuleType } from '@/shared/client/module-types';
-import { useReadingQueue } from '@/shared/client/reading-queue';
+import { useWaiting } from '@/shared/client/waiting/waiting';
+import type { WaitingReading } from '@/shared/client/waiting/waiting-write';
 import { useWorkshop } from '@/shared/client/workshop';
 import type { ChargeDto, ReadingDto, ReadingInput } from '@/shared/contract/charge';
 import { channelsOf, isUnderWay } from '@/shared/ui/charge/card-model';
@@ -23,15 +24,16 @@ import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
+import { useState } from 'react';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
 /** The workshop's lag limit until its settings are read, V. */
 const usualLagLimitVolts = 0.02;
 
-/** A reading of a running charge over its live screen; `?correct=` puts an old one right. */
+/** A reading of a running charge over its live screen; `?correct=` puts an old one right, `?waiting=` one that is not sent. */
 export default function Log() {
-  const { id, correct } = useLocalSearchParams<{ id: string; correct?: string }>();
+  const { id, correct, waiting } = useLocalSearchParams<{ id: string; correct?: string; waiting?: string }>();
   const router = useRouter();
   const query = useCharge(id);
   const { zone, marks } = useFormats();
@@ -67,10 +69,10 @@ export default function Log() {
         />
       ) : (
         <>
-          <LiveHead charge={charge} at={at} knownAt={link.state === 'down' ? link.since : null} />
+          <LiveHead charge={charge} at={at} knownAt={knownAt(link, at.asOf)} />
           <CardRibbon card={charge} at={at} height={76} />
           {may ? (
-            <Sheet charge={charge} correcting={correcting} now={now} onClose={close} />
+            <Sheet charge={charge} correcting={correcting} waitingKey={waiting ?? null} now={now} onClose={close} />
           ) : (
             <NotNow correct={correct !== undefined} onClose={close} />
           )}
@@ -97,39 +99,49 @@ function NotNow({ correct, onClose }: { correct: boolean; onClose: () => void })
 function Sheet({
   charge,
   correcting,
+  waitingKey,
   now,
   onClose,
 }: {
   charge: ChargeDto;
   correcting: ReadingDto | null;
+  /** One that waits on this device and is typed anew. */
+  waitingKey: string | null;
   now: number;
   onClose: () => void;
 }) {
   const { zone, marks } = useFormats();
   const toast = useToast();
   const offline = useLink().state === 'down';
-  const { log } = useReadingQueue(charge.id);
+  const { waiting, write, replace } = useWaiting(charge.id);
+  // Read once: it is gone from the list when it is sent meanwhile, and what is typed goes the usual way.
+  const [anew] = useState(() => waiting.find((one) => one.kind === 'reading' && one.key === waitingKey) ?? null);
   const correct = useCorrectReading();
   const meters = useMeters().data ?? [];
   const type = useModuleType(charge.moduleTypeId).data;
   const lagMillivolts = useWorkshop().data?.lagLimitMillivolts;
   const count = charge.groups.length;
+  const before = correcting ?? (anew?.kind === 'reading' ? asRead(anew) : null);
   const f = useContractForm({
     schema: logSchema({
       window: { ...charge, groupsInSeries: count },
       direction: charge.option.steps[charge.stepIndex]?.direction ?? charge.direction,
       zone,
       now: serverNow,
-      ...(correcting ? { atOf: correctedInstant(correcting, zone) } : {}),
+      ...(before ? { atOf: correctedInstant(before, zone) } : {}),
     }),
-    initial: correcting ? logOf(correcting, count, zone, marks) : emptyLog(count),
-    draft: correcting ? `correct.${correcting.id}` : `log.${charge.id}`,
+    initial: before ? logOf(before, count, zone, marks) : emptyLog(count),
+    draft: correcting ? `correct.${correcting.id}` : anew ? `waiting.${anew.key}` : `log.${charge.id}`,
     send: async ({ reason, ...input }) => {
       if (correcting) {
         await correct.mutateAsync({ id: charge.id, readingId: correcting.id, ...input, reason: reason ?? null });
         toast({ text: 'The reading is put right. The old one stays in the log.' });
+      } else if (anew && waiting.some(({ key }) => key === anew.key)) {
+        await replace(anew.key, { input: { ...input, at: input.at ?? anew.input.at } });
+        toast({ text: 'Kept anew. It is sent when the connection is there.' });
       } else {
-        const taken = await log(input satisfies Partial<ReadingInput>);
+        const reading = { ...input, at: input.at ?? anew?.input.at } satisfies Partial<ReadingInput>;
+        const taken = await write({ kind: 'reading', chargeId: charge.id, title: charge.title, input: reading });
         toast({ text: loggedText(taken) });
       }
       onClose();
@@ -158,6 +170,17 @@ function Sheet({
     />
   );
 }
+
+/** A reading that waits here, as its form takes an old one. */
+const asRead = ({ input }: WaitingReading) => ({
+  at: input.at,
+  terminalVolts: input.terminalVolts ?? null,
+  amps: input.amps ?? null,
+  celsius: input.celsius ?? null,
+  groupVolts: input.groupVolts ?? null,
+  meterId: input.meterId ?? null,
+  takenAt: input.takenAt ?? null,
+});
 
 /** @param taken the charge with the reading in it; null: it waits on this device */
 function loggedText(taken: ChargeDto | null): string {

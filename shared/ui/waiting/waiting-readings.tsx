@@ -1,23 +1,13 @@
 import { View } from 'react-native';
-import type { ChargeDto, ReadingInput } from '@/shared/contract/charge';
+import type { ReadingDto } from '@/shared/contract/charge';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { EN_DASH } from '../format/marks';
 import { ampsNumber, celsiusNumber, clipVoltsNumber } from '../format/quantities';
-import { Caution } from '../primitives/call-out';
 import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
-import { makeStyles } from '../theme/make-styles';
-import { lastReading } from './seen-and-plan';
-
-/** A reading that waits on this device for the connection. */
-export interface WaitingReading {
-  key: string;
-  input: Partial<ReadingInput> & { at: string };
-  /** Why the server did not take it. */
-  refused: string | null;
-}
+import type { WaitingReadingItem } from './waiting-items';
 
 interface Row {
   key: string;
@@ -30,23 +20,22 @@ interface Row {
 
 /** Readings that wait on this device, latest first, and under them the last one that was sent. */
 export function WaitingReadings({
-  charge,
+  last,
   waiting,
   now,
   device,
   onRemove,
 }: {
-  charge: ChargeDto;
-  waiting: readonly WaitingReading[];
+  /** The last one that was sent; null: none. */
+  last: ReadingDto | null;
+  waiting: readonly WaitingReadingItem[];
   now: number;
   /** 'phone' or 'device'. */
   device: string;
   onRemove: (key: string) => void;
 }) {
-  const styles = useStyles();
   const { zone, marks } = useFormats();
   if (waiting.length === 0) return null;
-  const last = lastReading(charge);
   const number = (value: number | null | undefined, words: (value: number) => string) =>
     value === null || value === undefined ? EN_DASH : words(value);
   const rows: Row[] = [
@@ -71,14 +60,6 @@ export function WaitingReadings({
   );
   return (
     <View>
-      <View style={styles.head}>
-        <Txt kind="heading" heading={2}>
-          {`Waiting on this ${device}`}
-        </Txt>
-        <Txt kind="small" tone="ink2">
-          sent once each
-        </Txt>
-      </View>
       <Table
         label={`Readings waiting on this ${device}`}
         rows={rows}
@@ -140,29 +121,6 @@ export function WaitingReadings({
           },
         ]}
       />
-      {waiting.map(({ key, input, refused }) =>
-        refused === null ? null : (
-          <Txt key={key} kind="label" tone="alarm" style={styles.refused}>
-            {`${moment(Date.parse(input.at), zone, now, marks)} was not taken: ${refused} Remove it and log it again.`}
-          </Txt>
-        ),
-      )}
     </View>
   );
 }
-
-/** Without a connection: what does not reach this device, and what to do meanwhile. */
-export function OfflineCaution({ charge, now, device }: { charge: ChargeDto; now: number; device: string }) {
-  const { zone, marks } = useFormats();
-  const next = charge.nextLookInAt === null ? null : moment(Date.parse(charge.nextLookInAt), zone, now, marks);
-  return (
-    <Caution>
-      {`Alerts do not reach this ${device} now. Stay with the charge${next === null ? '' : `, and look in at ${next}`}. To stop, switch off at the charger and note it here afterwards.`}
-    </Caution>
-  );
-}
-
-const useStyles = makeStyles(() => ({
-  head: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline', columnGap: 12 },
-  refused: { marginTop: 6 },
-}));
