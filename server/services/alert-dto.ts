@@ -16,6 +16,7 @@ export const alertDto = (alert: Alert, people: ReadonlyMap<string, PersonName>):
   chargeId: alert.chargeId,
   title: alert.title,
   for: personRef(people, alert.personId),
+  forRole: alert.forRole,
   seen: alert.seen,
   checkFirst: alert.checkFirst,
   raisedAt: toInstant(alert.raisedAt),

@@ -6,7 +6,8 @@
 import type { EntityManager } from 'typeorm';
 import type { AlertKind } from '@/shared/contract/alert';
 import type { Alert } from '../entities/alert';
-import { alertsOfCharge, insertAlert, updateAlert } from '../repositories/alerts.repository';
+import { clearAlert, raiseAlert } from '../alerts/turns';
+import { alertsOfCharge } from '../repositories/alerts.repository';
 import {
   chargeDoneText,
   checkDueText,
@@ -107,8 +108,7 @@ export async function syncAlerts(
       if (isToldAgain(match, alert, now, dueWas)) changes.raised.push(alert);
       continue;
     }
-    await updateAlert(manager, charge.workshopId, alert.id, { clearedAt: now });
-    alert.clearedAt = now;
+    await clearAlert(manager, alert, now);
     changes.changed.push(alert.id);
   }
   for (const want of wanted) {
@@ -116,7 +116,7 @@ export async function syncAlerts(
     const cause = causeOf(charge.id, want, all);
     if (all.some((one) => one.cause === cause)) continue;
     const alert = newAlert(file, want, cause, now, dueWas);
-    await insertAlert(manager, alert);
+    await raiseAlert(manager, alert, file.workshop, now);
     all.push(alert);
     changes.raised.push(alert);
   }
@@ -148,6 +148,7 @@ function newAlert(file: ChargeFile, want: Wanted, cause: string, now: number, du
     kind: want.kind,
     level: want.level,
     chargeId: charge.id,
+    wallId: null,
     personId: charge.personId,
     title: want.text.title,
     seen: lateByS >= LATE_S ? `${want.text.seen} Told ${durationText(lateByS)} late.` : want.text.seen,
@@ -157,6 +158,9 @@ function newAlert(file: ChargeFile, want: Wanted, cause: string, now: number, du
     takenById: null,
     takenAt: null,
     passedAt: null,
+    turn: 0,
+    forRole: null,
+    passDueAt: null,
     clearedAt: null,
   };
 }

@@ -189,6 +189,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     kind: 'look-in-due',
     level: 'amber',
     chargeId,
+    wallId: null,
     personId: workshop.people.technician.id,
     title: `${name}’s look-in`,
     seen: 'Nothing yet.',
@@ -198,6 +199,9 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     takenById: null,
     takenAt: null,
     passedAt: null,
+    turn: 0,
+    forRole: null,
+    passDueAt: null,
     clearedAt: null,
   };
   await server.deps.dataSource.manager.insert(Alert, alert);

@@ -19,6 +19,7 @@ import { migrations } from '@/server/migrations/all';
 import { makeLocalCertificate } from '@/server/cli/certificate';
 import { startServer, type RunningServer } from '@/server/start-server';
 import { cookiesOf } from '@/tests/support/cookies';
+import { testConfig } from '@/tests/support/server';
 
 const root = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-start-'));
 afterAll(() => fs.rmSync(root, { recursive: true, force: true }));
@@ -26,18 +27,8 @@ let folders = 0;
 const newFolder = () => path.join(root, String(++folders));
 const log = makeLog('silent');
 const configFor = (dataDir: string, change: Partial<Config> = {}): Config => ({
-  port: 0,
-  host: '127.0.0.1',
+  ...testConfig,
   dataDir,
-  webDir: '/nonexistent',
-  demo: false,
-  tls: null,
-  proxyHops: 0,
-  publicUrl: null,
-  logLevel: 'silent',
-  metroPort: null,
-  backupHours: 0,
-  metricsToken: null,
   ...change,
 });
 
@@ -94,7 +85,7 @@ describe('the first start', () => {
     expect((await request(first.address).post('/api/session').send({ email, password: 'not this' })).status).toBe(401);
     await first.stop();
     running.pop();
-    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key', 'server.lock']);
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'push.key', 'secret.key', 'server.lock']);
     const second = await start(folder);
     expect((await request(second.address).get('/api/session').set('Cookie', cookie)).body.person.email).toBe(email);
   });
@@ -275,7 +266,7 @@ describe('the process', () => {
     finish();
     expect(await status).toBe(201);
     expect(await exit).toBe(0);
-    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key', 'server.lock']);
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'push.key', 'secret.key', 'server.lock']);
     expect(mode(databaseFile(folder))).toBe('600');
     const database = new Database(databaseFile(folder), { readonly: true });
     expect(database.prepare('SELECT email FROM person').all()).toEqual([{ email: 'alva@example.com' }]);
