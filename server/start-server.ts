@@ -1,5 +1,4 @@
-import http from 'node:http';
-import https from 'node:https';
+import type http from 'node:http';
 import type { AddressInfo } from 'node:net';
 import type { Logger } from 'pino';
 import type { DataSource } from 'typeorm';
@@ -14,6 +13,7 @@ import { seedDemo } from './demo/seed';
 import type { Deps } from './deps';
 import { lockFolder, type FolderLock } from './folder-lock';
 import type { Lifecycle } from './lifecycle';
+import { makeHttpServer } from './http-server';
 import { makeSleeper } from './live/sleeper-loop';
 import { makeSocketHub } from './live/socket-hub';
 import { proxyMetroUpgrades } from './middleware/metro-proxy';
@@ -136,7 +136,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     };
     if (config.demo) await seedDemo(deps);
     const app = createApp(deps);
-    const server = config.tls ? https.createServer(config.tls, app) : http.createServer(app);
+    const server = makeHttpServer(config, app);
     hub.attach(server);
     if (config.metroPort !== null) proxyMetroUpgrades(server, config.metroPort);
     await quietly(sweptPhotos(dataSource, config, clock.now(), log), log, 'the photos were not swept');

@@ -36,8 +36,15 @@ function foreseen(error: unknown): DomainError | null {
   if (error instanceof URIError || status === 400)
     return new DomainError(400, 'bad_request', 'This address cannot be read.');
   const { code } = error as { code?: unknown };
+  if (code === 'SQLITE_FULL' || code === 'ENOSPC')
+    return new DomainError(
+      503,
+      'disk_full',
+      'The disk of the server is full, so nothing was written. What was written before is safe. Tell whoever runs the server, then try again.',
+      { retryAfterS: 60 },
+    );
   // With their extended forms: SQLITE_BUSY_SNAPSHOT, SQLITE_IOERR_WRITE.
-  if (typeof code === 'string' && /^SQLITE_(BUSY|LOCKED|FULL|READONLY|IOERR)(_|$)/.test(code))
+  if (typeof code === 'string' && /^SQLITE_(BUSY|LOCKED|READONLY|IOERR)(_|$)/.test(code))
     return new DomainError(503, 'database_busy', 'The database could not be written just now. Try again.', {
       retryAfterS: 2,
     });

@@ -35,6 +35,8 @@ export async function changeMe(deps: Deps, member: Member, input: ChangeMeInput,
       throw invalid({ currentPassword: 'This is not your present password any more.' });
     // A manager's form must not put the old name back unseen.
     const renamed = input.name !== undefined && input.name !== present.name;
+    // Nothing to change is no mistake.
+    if (!renamed && !passwordHash) return [];
     await updatePerson(manager, workshopId, personId, {
       ...(renamed ? { name, rev: present.rev + 1 } : {}),
       ...(passwordHash ? { passwordHash } : {}),

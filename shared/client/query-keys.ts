@@ -29,5 +29,6 @@ export const roots = {
   benchPlan: 'bench-plan',
   work: 'work',
   staffing: 'staffing',
+  status: 'status',
 } as const;
 export type Root = (typeof roots)[keyof typeof roots];

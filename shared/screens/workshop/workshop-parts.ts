@@ -9,6 +9,7 @@ import { PackTypesPart } from './pack-types-part';
 import type { PartProps } from './part-props';
 import { PeoplePart } from './people-part';
 import { ResistorsPart } from './resistors-part';
+import { ServerPart } from './server-part';
 import { WallsPart } from './walls-part';
 
 /** The part of each section. */
@@ -22,4 +23,5 @@ export const workshopParts: Record<SectionKey, (props: PartProps) => ReactNode> 
   limits: LimitsPart,
   hours: HoursPart,
   walls: WallsPart,
+  server: ServerPart,
 };

@@ -9,6 +9,7 @@ export const sections = [
   { key: 'limits', title: 'Limits', meaning: 'Tolerance, rest, look-ins, inrush, who decides' },
   { key: 'hours', title: 'Name and hours', meaning: 'Name, time zone, working hours' },
   { key: 'walls', title: 'Walls', meaning: 'Screens that show the board' },
+  { key: 'server', title: 'Server', meaning: 'Version, copies of the data, export of everything' },
 ] as const;
 
 export type SectionKey = (typeof sections)[number]['key'];

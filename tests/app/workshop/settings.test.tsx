@@ -3,6 +3,7 @@ import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Workshop from '@/app/(workshop)/workshop/index';
 import { roles, type Role } from '@/shared/contract/roles';
+import type { StatusDto } from '@/shared/contract/status';
 import { pressFrom } from '../../support/press';
 import { draw, emptyDevice } from '../charges/bench-of';
 import { fakeServer, problem } from './server';
@@ -17,6 +18,30 @@ vi.mock('@/shared/ui/theme/use-breakpoint', async (original) => ({
   useBreakpoint: () => state.width,
 }));
 
+const status: StatusDto = {
+  version: '0.1.0',
+  startedAt: new Date(Date.now() - 3 * 3600_000).toISOString(),
+  at: new Date().toISOString(),
+  databaseBytes: 12.4 * 1024 ** 2,
+  freeBytes: 80 * 1024 ** 3,
+  backups: {
+    everyHours: 1,
+    latest: [
+      {
+        name: 'bidewell-clock-2026-06-09T08-00-00Z.sqlite',
+        at: new Date(Date.now() - 20 * 60_000).toISOString(),
+        bytes: 11.9 * 1024 ** 2,
+        byClock: true,
+      },
+    ],
+    count: 17,
+    bytes: 150 * 1024 ** 2,
+    failed: null,
+  },
+  sockets: 4,
+  overdueLooks: 0,
+};
+
 let server: ReturnType<typeof fakeServer>;
 function open(role: Role, width: 'phone' | 'wide', section?: string, answers: typeof server.answers = {}) {
   state.params = section ? { section } : {};
@@ -24,6 +49,7 @@ function open(role: Role, width: 'phone' | 'wide', section?: string, answers: ty
   server = fakeServer(role);
   for (const path of ['chargers', 'meters', 'module-types', 'pack-types', 'resistors', 'walls', 'invitations'])
     server.answers[`GET /api/${path}`] = () => Response.json([]);
+  server.answers['GET /api/status'] = () => Response.json(status);
   Object.assign(server.answers, answers);
   draw(<Workshop />);
 }
@@ -39,16 +65,16 @@ beforeEach(() => {
 afterEach(() => vi.unstubAllGlobals());
 
 describe('the settings of the workshop', () => {
-  it('are nine rows on the phone, each a way to its part', async () => {
+  it('are ten rows on the phone, each a way to its part', async () => {
     open('manager', 'phone');
     fireEvent.click(await screen.findByText('Levelling resistors'));
     expect(router.push).toHaveBeenCalledWith('/workshop?section=resistors');
     expect(screen.queryByRole('region')).toBeNull();
   });
 
-  it('are nine parts on the desk; the walls stand last, at the side of those who approve them', async () => {
+  it('are ten parts on the desk; the walls stand last, at the side of those who approve them', async () => {
     open('manager', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(9));
+    await waitFor(() => expect(parts()).toHaveLength(10));
     expect(parts()).toEqual([
       'People and roles',
       'Chargers and channels',
@@ -58,6 +84,7 @@ describe('the settings of the workshop', () => {
       'Levelling resistors',
       'Limits',
       'Name and hours',
+      'Server',
       'Walls',
     ]);
     expect(screen.getByRole('button', { name: 'Make the invitation' })).toBeTruthy();
@@ -66,7 +93,7 @@ describe('the settings of the workshop', () => {
 
   it('can be read by a technician, with who may change them in place of the ways to do so', async () => {
     open('technician', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(9));
+    await waitFor(() => expect(parts()).toHaveLength(10));
     expect(await screen.findByText('No charger yet. Nothing can be planned without one.')).toBeTruthy();
     expect(screen.queryByText('add a charger')).toBeNull();
     expect(screen.queryByRole('button', { name: 'Make the invitation' })).toBeNull();
@@ -83,6 +110,52 @@ describe('the settings of the workshop', () => {
     server.answers['GET /api/meters'] = () => Response.json([]);
     fireEvent.click(meters().getByRole('button', { name: 'Try again' }));
     await waitFor(() => expect(meters().getByText(/^No meter yet/)).toBeTruthy());
+  });
+});
+
+describe('the server', () => {
+  const part = () => within(screen.getByRole('region', { name: 'Server' }));
+
+  it('tells the manager its version, the size of its data and the newest copy, and makes another at a press', async () => {
+    open('manager', 'wide');
+    await waitFor(() => expect(part().getByText('0.1.0')).toBeTruthy());
+    expect(part().getByText('12.4 MiB')).toBeTruthy();
+    expect(part().getByText('150 MiB')).toBeTruthy();
+    server.answers['POST /api/status/backup'] = () => Response.json(status);
+    fireEvent.click(part().getByRole('button', { name: 'Make a copy now' }));
+    await waitFor(() => expect(server.writes().map(({ path }) => path)).toEqual(['/api/status/backup']));
+    // What is shown is asked for again.
+    await waitFor(() => expect(server.sent.filter(({ path }) => path === '/api/status')).toHaveLength(2));
+  });
+
+  it('says why a copy could not be made, and keeps saying that the last one was not', async () => {
+    open('manager', 'phone', 'server', {
+      'GET /api/status': () =>
+        Response.json({
+          ...status,
+          backups: { ...status.backups, failed: { at: status.at, reason: 'No space left on the disk.' } },
+        }),
+      'POST /api/status/backup': () => problem(400, 'No copy could be made: no space left on the disk.'),
+    });
+    expect(await screen.findByText('The last copy could not be made: No space left on the disk.')).toBeTruthy();
+    fireEvent.click(screen.getByRole('button', { name: 'Make a copy now' }));
+    expect(await screen.findByText('No copy could be made: no space left on the disk.')).toBeTruthy();
+  });
+
+  it('exports only after saying that customers are in it', async () => {
+    open('manager', 'phone', 'server');
+    fireEvent.click(await screen.findByRole('button', { name: 'Export everything' }));
+    expect(await screen.findByText(/Names and contacts of customers are in it/)).toBeTruthy();
+    expect(server.sent.some(({ path }) => path === '/api/export.zip')).toBe(false);
+    server.answers['GET /api/export.zip'] = () => problem(400, 'The export was refused.');
+    fireEvent.click(screen.getByRole('button', { name: 'Export' }));
+    expect(await screen.findByText('The export was refused.')).toBeTruthy();
+  });
+
+  it.each(roles.filter((role) => role !== 'manager'))('is not shown to a %s, who reads whom to ask', async (role) => {
+    open(role, 'phone', 'server');
+    expect(await screen.findByText(/Hella Brandt/)).toBeTruthy();
+    expect(server.sent.some(({ path }) => path === '/api/status')).toBe(false);
   });
 });
 

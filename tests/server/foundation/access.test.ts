@@ -16,9 +16,18 @@ import { routeFixtures, type Fit, type RouteFixture } from './route-fixtures';
 
 const noLimit = { points: 1_000_000, durationS: 1 };
 const limits = Object.fromEntries(
-  ['open', 'estimate', 'papers', 'createWorkshop', 'join', 'wallCode', 'wallToken', 'wallGuess', 'signInDevice'].map(
-    (name) => [name, noLimit],
-  ),
+  [
+    'open',
+    'estimate',
+    'papers',
+    'backup',
+    'createWorkshop',
+    'join',
+    'wallCode',
+    'wallToken',
+    'wallGuess',
+    'signInDevice',
+  ].map((name) => [name, noLimit]),
 );
 // With the demo on, so that its route is walked too.
 /** A database in memory has no file to copy. */

@@ -61,6 +61,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /metrics': { who: 'anyone', anyoneHears: 404 },
   'GET /api/status': manager(),
   'POST /api/status/backup': manager(),
+  'GET /api/export.zip': manager(),
 
   'GET /api/front-door': { who: 'anyone' },
   'POST /api/session': {
