@@ -141,9 +141,9 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     if (config.metroPort !== null) proxyMetroUpgrades(server, config.metroPort);
     await quietly(sweptPhotos(dataSource, config, clock.now(), log), log, 'the photos were not swept');
     await sleeper.start();
+    const port = await listenOn(server, config);
     // What waits goes out beside the start: a mail server that does not answer must not keep the workshop waiting.
     const sending = quietly(dispatcher.start(), log, 'the dispatcher did not start');
-    const port = await listenOn(server, config);
     lifecycle.ready = true;
     watchProcess(deps);
     backups.start();

@@ -1,4 +1,5 @@
 /** Every routes file of the server; add yours here. */
+import { alertSettingsRoutes } from './alert-settings.routes';
 import { alertsRoutes } from './alerts.routes';
 import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
@@ -37,5 +38,6 @@ export const routesModules: RoutesModule[] = [
   chargesRoutes,
   boardRoutes,
   alertsRoutes,
+  alertSettingsRoutes,
   waitsRoutes,
 ];
