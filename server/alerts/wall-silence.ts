@@ -75,7 +75,7 @@ async function raiseSilence(manager: EntityManager, wall: Wall, now: number) {
     chargeId: null,
     wallId: wall.id,
     personId: null,
-    title: `Wall ${wall.name}`,
+    title: wall.name,
     seen: `It was last heard of at ${clockText(wall.lastHeardAt!, workshop.zone, now)}. What it shows is old.`,
     checkFirst: 'Its power, then its network. A wall that is not needed any more is taken off under Workshop.',
     raisedAt: now,

@@ -110,7 +110,8 @@ async function startCharge(server: TestServer, technician: TestAgent, spareId: s
   return bodyOf<ChargeDto>(start);
 }
 
-async function addWall(server: TestServer, foreman: TestAgent, name: string) {
+/** Pairs a wall. */
+export async function addWall(server: TestServer, foreman: TestAgent, name: string) {
   const asked = await bodyOf<WallCodeDto>(server.anyone.post('/api/wall/codes'), 201);
   const { userCode, deviceCode } = asked;
   const form = { userCode, name: `Wall of ${name}`, diagonalInches: '55', distanceMetres: '7' };
