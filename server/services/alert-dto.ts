@@ -17,6 +17,7 @@ export const alertDto = (alert: Alert, people: ReadonlyMap<string, PersonName>):
   title: alert.title,
   for: personRef(people, alert.personId),
   forRole: alert.forRole,
+  turn: alert.turn,
   seen: alert.seen,
   checkFirst: alert.checkFirst,
   raisedAt: toInstant(alert.raisedAt),

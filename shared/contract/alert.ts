@@ -51,6 +51,8 @@ export interface AlertDto {
   for: PersonRef | null;
   /** Nobody took it in time: it has gone on to those of this role, and to those above them. Null: it has not. */
   forRole: 'foreman' | 'manager' | null;
+  /** Counts whom it has been with: the same alert comes anew with the next turn, and twice within one it is one. */
+  turn: number;
   seen: string;
   checkFirst: string;
   raisedAt: Instant;

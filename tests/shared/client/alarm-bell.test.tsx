@@ -8,6 +8,7 @@ import { queryClient } from '@/shared/client/query-client';
 import { rememberSignedIn } from '@/shared/client/session-state';
 import { contours, vibrationOf, type SoundName } from '@/shared/client/sound-contours';
 import type { AlertDto } from '@/shared/contract/alert';
+import type { AlertSettingsDto } from '@/shared/contract/alert-settings';
 import { fakeServer } from '../../app/workshop/server';
 
 /** The socket's two ends: what the page listens to, and the mouth of the server. */
@@ -38,6 +39,8 @@ const alert = (more: Partial<AlertDto> = {}): AlertDto => ({
   chargeId: 'c1',
   title: 'R-2406 at B2',
   for: petra,
+  forRole: null,
+  turn: 0,
   seen: 'The current has ended.',
   checkFirst: 'Switch it off.',
   raisedAt: iso(start),
@@ -50,7 +53,10 @@ const alert = (more: Partial<AlertDto> = {}): AlertDto => ({
 });
 const noticeOf = (id: string) => ({
   type: 'notify',
-  notice: { title: 'R-2406 at B2', body: 'The current has ended. Switch it off.', url: '/charges/c1', tag: id },
+  notice: {
+    ...{ title: 'R-2406 at B2', body: 'The current has ended. Switch it off.', url: '/charges/c1', tag: id },
+    ...{ id, turn: 0 },
+  },
 });
 
 /** The page keeps one for its life. */
@@ -61,6 +67,7 @@ let told: unknown[];
 let listed: AlertDto[];
 let visible: DocumentVisibilityState;
 let stops: (() => void)[];
+let server: ReturnType<typeof fakeServer>;
 
 /** A browser that plays after a tap, shakes, and shows notices by its worker. */
 function browser() {
@@ -150,7 +157,7 @@ beforeEach(() => {
   stops = [];
   listed = [];
   browser();
-  const server = fakeServer('technician');
+  server = fakeServer('technician');
   server.answers['GET /api/alerts'] = () => Response.json(listed);
   server.answers['GET /api/board'] = () => Response.json({ rev: 1, at: iso(start), charges: [], channels: [] });
 });
@@ -221,6 +228,57 @@ describe('an alert that is raised', () => {
     expect(played).toEqual(tonesOf('ready'));
     await pass(5 * minute);
     expect(played).toEqual(tonesOf('ready', 'ready'));
+  });
+});
+
+describe('what its person has set', () => {
+  const settings = (more: Partial<AlertSettingsDto> = {}): AlertSettingsDto => ({
+    ways: [{ kind: 'charge-done', level: 'amber', ways: ['app'] }],
+    quiet: null,
+    alarmsBreakThrough: true,
+    eMail: { address: 'petra@example.com', on: false },
+    devices: [],
+    ...more,
+  });
+  const given = (more?: Partial<AlertSettingsDto>) =>
+    (server.answers['GET /api/me/alert-settings'] = () => Response.json(settings(more)));
+  const raise = async (one: AlertDto) => {
+    listed = [one];
+    says('alert:raised', one);
+    await pass(1000);
+  };
+
+  it('a cause that the page is not to tell rings nowhere and shows no notice', async () => {
+    given({ ways: [{ kind: 'charge-done', level: 'amber', ways: ['e-mail'] }] });
+    await open();
+    await tap();
+    look('hidden');
+    await raise(alert({ raisedAt: iso(Date.now()) }));
+    await pass(10 * minute);
+    expect([played, told]).toEqual([[], []]);
+  });
+
+  it('in quiet hours nothing rings till they are over, then what is open does, once', async () => {
+    // 11:00 on the clock of the workshop, which keeps UTC.
+    given({ quiet: { from: '10:30', to: '11:20' } });
+    await open();
+    await tap();
+    await raise(alert({ raisedAt: iso(Date.now()) }));
+    await pass(18 * minute);
+    expect(played).toEqual([]);
+    await pass(3 * minute);
+    expect(played).toEqual(tonesOf('ready'));
+  });
+
+  it.each([
+    [true, 'overdue'],
+    [false, null],
+  ] as const)('an alarm in quiet hours: breaks through %s', async (alarmsBreakThrough, sound) => {
+    given({ quiet: { from: '10:30', to: '11:20' }, alarmsBreakThrough });
+    await open();
+    await tap();
+    await raise(alert({ kind: 'overdue', level: 'alarm', raisedAt: iso(Date.now()) }));
+    expect(played).toEqual(sound ? tonesOf(sound) : []);
   });
 });
 
