@@ -18,7 +18,7 @@ export async function pushHere(): Promise<PushHere> {
 export async function subscribePush(
   _serverKey: string,
 ): Promise<PushDeviceInput | 'denied' | 'unavailable' | 'refused'> {
-  if ((await askNoticePermission()) !== 'granted') return 'denied';
+  if ((await noticePermission()) !== 'granted' && (await askNoticePermission()) !== 'granted') return 'denied';
   try {
     const { getExpoPushTokenAsync } = await load();
     const { data } = await getExpoPushTokenAsync();

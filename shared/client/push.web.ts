@@ -1,6 +1,6 @@
 /** Pushes to this browser: its own service brings them, so they come with the page closed. */
 import type { PushDeviceInput } from '@/shared/contract/alert-settings';
-import { askNoticePermission } from './notify';
+import { askNoticePermission, noticePermission } from './notify';
 import type { PushHere } from './push-types';
 import { serviceWorker } from './service-worker';
 
@@ -30,7 +30,7 @@ export async function pushHere(): Promise<PushHere> {
  */
 export async function subscribePush(key: string): Promise<PushDeviceInput | 'denied' | 'unavailable' | 'refused'> {
   if (!there()) return 'unavailable';
-  if ((await askNoticePermission()) !== 'granted') return 'denied';
+  if ((await noticePermission()) !== 'granted' && (await askNoticePermission()) !== 'granted') return 'denied';
   const registration = await serviceWorker();
   if (!registration) return 'unavailable';
   const { pushManager } = registration;

@@ -9,6 +9,9 @@ export interface LimitTexts {
   lookInMinutes: string;
   inrushLimitC: string;
   lagLimitMillivolts: string;
+  passOnTellMinutes: string;
+  passOnAmberMinutes: string;
+  passOnAlarmMinutes: string;
   technicianDecides: boolean;
   baseRev: number;
 }
@@ -42,6 +45,27 @@ export const limitFields: readonly { key: LimitKey; name: string; unit: string; 
     meaning: 'joining groups in parallel, times the capacity in an hour',
   },
   { key: 'lagLimitMillivolts', name: 'Lag limit', unit: 'mV', meaning: 'a group this far behind the others is odd' },
+  {
+    key: 'passOnAlarmMinutes',
+    name: 'An alarm goes on after',
+    unit: 'min',
+    whole: true,
+    meaning: 'that nobody has taken: to the foremen, then the managers; 0: never',
+  },
+  {
+    key: 'passOnAmberMinutes',
+    name: 'What needs a hand goes on after',
+    unit: 'min',
+    whole: true,
+    meaning: 'that nobody has taken; 0: never',
+  },
+  {
+    key: 'passOnTellMinutes',
+    name: 'What only tells goes on after',
+    unit: 'min',
+    whole: true,
+    meaning: 'that nobody has taken; 0: never',
+  },
 ];
 export const technicianDecidesName = 'A technician may decide between two sources';
 export const limitNames: Readonly<Record<string, string>> = {

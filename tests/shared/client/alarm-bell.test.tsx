@@ -8,7 +8,6 @@ import { queryClient } from '@/shared/client/query-client';
 import { rememberSignedIn } from '@/shared/client/session-state';
 import { contours, vibrationOf, type SoundName } from '@/shared/client/sound-contours';
 import type { AlertDto } from '@/shared/contract/alert';
-import type { AlertSettingsDto } from '@/shared/contract/alert-settings';
 import { fakeServer } from '../../app/workshop/server';
 
 /** The socket's two ends: what the page listens to, and the mouth of the server. */
@@ -232,53 +231,18 @@ describe('an alert that is raised', () => {
 });
 
 describe('what its person has set', () => {
-  const settings = (more: Partial<AlertSettingsDto> = {}): AlertSettingsDto => ({
-    ways: [{ kind: 'charge-done', level: 'amber', ways: ['app'] }],
-    quiet: null,
-    alarmsBreakThrough: true,
-    eMail: { address: 'petra@example.com', on: false },
-    devices: [],
-    ...more,
-  });
-  const given = (more?: Partial<AlertSettingsDto>) =>
-    (server.answers['GET /api/me/alert-settings'] = () => Response.json(settings(more)));
-  const raise = async (one: AlertDto) => {
-    listed = [one];
-    says('alert:raised', one);
-    await pass(1000);
-  };
-
-  it('a cause that the page is not to tell rings nowhere and shows no notice', async () => {
-    given({ ways: [{ kind: 'charge-done', level: 'amber', ways: ['e-mail'] }] });
-    await open();
-    await tap();
-    look('hidden');
-    await raise(alert({ raisedAt: iso(Date.now()) }));
-    await pass(10 * minute);
-    expect([played, told]).toEqual([[], []]);
-  });
-
   it('in quiet hours nothing rings till they are over, then what is open does, once', async () => {
     // 11:00 on the clock of the workshop, which keeps UTC.
-    given({ quiet: { from: '10:30', to: '11:20' } });
+    const settings = { ways: [], quiet: { from: '10:30', to: '11:20' }, alarmsBreakThrough: true };
+    server.answers['GET /api/me/alert-settings'] = () => Response.json(settings);
     await open();
     await tap();
-    await raise(alert({ raisedAt: iso(Date.now()) }));
+    listed = [alert({ raisedAt: iso(Date.now()) })];
+    says('alert:raised', listed[0]);
     await pass(18 * minute);
     expect(played).toEqual([]);
     await pass(3 * minute);
     expect(played).toEqual(tonesOf('ready'));
-  });
-
-  it.each([
-    [true, 'overdue'],
-    [false, null],
-  ] as const)('an alarm in quiet hours: breaks through %s', async (alarmsBreakThrough, sound) => {
-    given({ quiet: { from: '10:30', to: '11:20' }, alarmsBreakThrough });
-    await open();
-    await tap();
-    await raise(alert({ kind: 'overdue', level: 'alarm', raisedAt: iso(Date.now()) }));
-    expect(played).toEqual(sound ? tonesOf(sound) : []);
   });
 });
 
