@@ -1,6 +1,7 @@
 export * from './types';
 export * from './plan-types';
 export * from './live-types';
+export * from './bench/bench-types';
 export { CalcInputError } from './errors';
 export { isBeyondCurve, shiftCurve, slopeAtSoc, socAtVolts, voltsAtSoc } from './curve/ocv';
 export { chargeThroughTerminals } from './charge-through-terminals';
@@ -38,7 +39,7 @@ export {
 export { learnedFactor, type ClosedCharge, type LearnedFactor } from './learn/learned-factor';
 
 // The planner and the running charge.
-export { planCharge } from './plan/plan-charge';
+export { planCharge, type OnlyWay } from './plan/plan-charge';
 export { soonestTerminals, type SoonestTerminals } from './plan/soonest-terminals';
 export { withTimeFactor } from './plan/time-factor';
 export { judgeCheck } from './plan/judge-check';
@@ -63,3 +64,9 @@ export {
   type CompareSourcesInput,
   type SourceComparison,
 } from './pack/compare-sources';
+
+// The bench plan: channels, other work, look-ins.
+export { planBench, earliestDueFirst } from './bench/plan-bench';
+export { planFills } from './bench/plan-fills';
+export { assignLookIns } from './bench/assign-look-ins';
+export { intersect, merge, subtract } from './bench/stretches';

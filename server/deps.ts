@@ -8,6 +8,7 @@ import type { Lifecycle } from './lifecycle';
 import type { LiveHub } from './live/hub';
 import type { Sleeper } from './live/sleeper';
 import type { Backups } from './services/backups';
+import type { BenchSolver } from './services/bench-plan/bench-solver';
 import type { Limits } from './services/limits';
 import type { Metrics } from './services/metrics';
 import type { Passwords } from './services/passwords';
@@ -26,6 +27,8 @@ export interface Deps {
   lifecycle: Lifecycle;
   /** Hashes and compares off the event loop. */
   passwords: Passwords;
+  /** Reckons for the bench plan off the event loop. */
+  bench: BenchSolver;
   /** Keys of this installation. */
   secrets: Secrets;
   /** Throttles, kept in memory. */

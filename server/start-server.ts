@@ -21,6 +21,7 @@ import { queryLog } from './middleware/query-log';
 import { migrate } from './migrate';
 import { earliestDueAt } from './repositories/charges.repository';
 import { makeBackups } from './services/backups';
+import { makeBenchSolver } from './services/bench-plan/bench-solver';
 import { makeLimits } from './services/limits';
 import { makeMetrics } from './services/metrics';
 import { makePasswords } from './services/passwords';
@@ -107,6 +108,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
   const dataSource = await makeDataSource(databaseFile(config.dataDir), queryLog(log, metrics)).initialize();
   const lifecycle: Lifecycle = { ready: false, startedAt: clock.now() };
   const passwords = makePasswords();
+  const bench = makeBenchSolver();
   try {
     await assertDurable(dataSource);
     const migrations = await migrate(dataSource, config.dataDir, clock.now(), log);
@@ -129,6 +131,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       outbox,
       lifecycle,
       passwords,
+      bench,
       secrets,
       limits,
       backups,
@@ -159,6 +162,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       await quietly(hub.close(), log, 'the sockets did not close');
       clearTimeout(drained);
       await quietly(passwords.close(), log, 'the hashing threads did not end');
+      await quietly(bench.close(), log, 'the thread of the bench plan did not end');
       await quietly(dataSource.query('PRAGMA wal_checkpoint(TRUNCATE)'), log, 'the write-ahead log was not emptied');
       await quietly(dataSource.destroy(), log, 'the database did not close');
       metrics.close();
@@ -167,6 +171,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     return { address: addressOf(config, port), port, deps, stop };
   } catch (error) {
     await passwords.close();
+    await bench.close();
     await dataSource.destroy();
     throw error;
   }

@@ -33,6 +33,7 @@ export default function WorkshopLayout() {
   const name = useSession().data?.person.name ?? '';
   const alerts = useOpenAlertCount();
   const repairs = useNeedsSomebodyCount();
+  const plansBench = useCan('bench:plan');
   const seesWaits = useCan('waits:read');
   const notices = useNotices(useCallback((url: string) => router.navigate(url as Href), [router]));
 
@@ -47,7 +48,7 @@ export default function WorkshopLayout() {
     <AppFrame
       rail={
         <SideRail
-          items={railItems({ alerts, repairs, seesWaits })}
+          items={railItems({ alerts, repairs, plansBench, seesWaits })}
           current={place.rail}
           onGo={go}
           person={{ key: 'more', title: name.split(' ')[0] || 'You', icon: 'person', href: '/more' }}

@@ -10,6 +10,9 @@ import { useCan, useMember } from '@/shared/client/session';
 import { armSound, switchSound, useSoundState } from '@/shared/client/sound';
 import { useSpares } from '@/shared/client/spares';
 import { useWorkshop } from '@/shared/client/workshop';
+import { BenchFits } from '@/shared/screens/work/bench-fits';
+import { FillCard } from '@/shared/screens/work/fill-card';
+import { useMyFills } from '@/shared/screens/work/use-my-fills';
 import { SoundTool } from '@/shared/ui/alerts/sound-tool';
 import { BenchList } from '@/shared/ui/bench/bench-list';
 import { FirstPlan } from '@/shared/ui/bench/first-plan';
@@ -44,6 +47,8 @@ export default function Bench() {
     <Button title="Plan a charge" icon="plan" onPress={() => go('/plan')} size={wide ? 'small' : 'normal'} />
   );
   const charges = board.data?.charges ?? null;
+  const mine = useMyFills(now);
+  const footWith = (fills: typeof mine.fills) => <BenchFits now={now} later={fills} onGo={go} onStale={mine.renew} />;
   const some = charges !== null && charges.length > 0;
   return (
     <Screen
@@ -66,10 +71,30 @@ export default function Bench() {
           at={{ now, asOf: Date.parse(board.data.at) }}
           lagLimitVolts={settings === undefined ? undefined : settings.lagLimitMillivolts / 1000}
           old={old}
+          docks={mine.fills.map(({ chargeId, from, to, title, stint }) => ({
+            key: stint?.id ?? from,
+            chargeId,
+            from: Date.parse(from),
+            to: Date.parse(to),
+            title,
+          }))}
+          next={
+            mine.now.length > 0 ? (
+              <View style={{ rowGap: 8, paddingTop: 12 }}>
+                {mine.now.map((fill) => (
+                  <FillCard key={fill.stint?.id} block={fill} now={now} onGo={go} onStale={mine.renew} />
+                ))}
+              </View>
+            ) : undefined
+          }
+          foot={footWith(mine.later)}
           onGo={go}
         />
       ) : charges ? (
-        <EmptyBench onGo={go} />
+        <>
+          <EmptyBench onGo={go} />
+          {footWith(mine.fills)}
+        </>
       ) : board.isError ? (
         <ErrorState
           failed="The bench could not be read."

@@ -53,10 +53,28 @@ export default function More() {
 function Places() {
   const router = useRouter();
   const go = (href: string) => () => router.navigate(href as Href);
+  const plansBench = useCan('bench:plan');
   const seesWaits = useCan('waits:read');
   const approves = useCan('wall:approve');
   return (
     <MoreGroup title="Workshop">
+      <MoreRow
+        icon="day"
+        title="My day"
+        meaning="Your hands, look-ins and fills in their order"
+        href="/my-day"
+        onPress={go('/my-day')}
+      />
+      <MoreRow icon="work" title="Other work" meaning="Pieces that fill a wait" href="/work" onPress={go('/work')} />
+      {plansBench ? (
+        <MoreRow
+          icon="plan"
+          title="Bench plan"
+          meaning="Channels and people on one time line"
+          href="/bench-plan"
+          onPress={go('/bench-plan')}
+        />
+      ) : null}
       <MoreRow
         icon="workshop"
         title="Workshop"

@@ -25,6 +25,12 @@ import { durationText, limitText, voltsText } from './words';
 
 const FINISHES: readonly Finish[] = ['over-and-settle', 'on-the-mark'];
 
+/** One way of connecting and ending, where the others are not asked for. */
+export interface OnlyWay {
+  way: Way;
+  finish: Finish;
+}
+
 /** A way that takes longer is left out, s, unless nothing is quicker. */
 const LONGEST_OFFERED_S = 36 * 3600;
 
@@ -36,9 +42,10 @@ const LONGEST_OFFERED_S = 36 * 3600;
  * set: the same input gives the same digits. Seconds count from the wished clip-on in an option, from now in `readyByS`,
  * `clipOnAtS` and `latestStartS`.
  *
+ * @param only one way and finish, in place of all: its options are those of the whole plan, but for the marks
  * @throws CalcInputError for a curve that cannot be
  */
-export function planCharge(asked: PlanInput): ChargePlan {
+export function planCharge(asked: PlanInput, only: OnlyWay | null = null): ChargePlan {
   const input = withTargetVolts(asked);
   const refusals = refuseCharge(input);
   if (refusals.length > 0) return refused(input, refusals);
@@ -79,8 +86,8 @@ export function planCharge(asked: PlanInput): ChargePlan {
       channelName: null,
       reason: 'No channel is in use here. Add a charger with its channels first.',
     });
-  if (countsFromEnd(model)) fromEnds(model, take);
-  if (!countsFromEnd(model) || input.acceptWideBand === true) forEachWay(model, take);
+  if (countsFromEnd(model)) fromEnds(model, take, only);
+  if (!countsFromEnd(model) || input.acceptWideBand === true) forEachWay(model, take, only);
   plan.options.sort((a, b) => a.totalS.p50 - b.totalS.p50 || a.handsOnS - b.handsOnS);
   leaveOutLong(plan, model);
   markSoonest(plan.options);
@@ -98,22 +105,25 @@ type Take = (
   found: Draft | NotPossible,
 ) => void;
 
-function forEachWay(model: PlanModel, take: Take): void {
+function forEachWay(model: PlanModel, take: Take, only: OnlyWay | null): void {
   const { channels, resistors, neighbour } = model.input;
   const named = (channel: ChannelParameters): { id: string; name: string } => ({
     id: channel.channelId,
     name: channel.name,
   });
   const severalGroups = model.groups.length > 1;
+  const asks = (way: Way): boolean => only === null || only.way === way;
   const single = channels.filter((channel) => channel.singleGroup && takesOneGroup(channel));
   for (const finish of FINISHES) {
+    if (only !== null && only.finish !== finish) continue;
     for (const channel of channels) {
-      take('terminals', finish, named(channel), terminalsWay(model, channel, finish));
+      if (asks('terminals')) take('terminals', finish, named(channel), terminalsWay(model, channel, finish));
       if (!severalGroups) continue;
-      take('group-by-group', finish, named(channel), groupByGroupWay(model, [channel], finish));
-      take('paralleled', finish, named(channel), paralleledWay(model, channel, finish));
+      if (asks('group-by-group'))
+        take('group-by-group', finish, named(channel), groupByGroupWay(model, [channel], finish));
+      if (asks('paralleled')) take('paralleled', finish, named(channel), paralleledWay(model, channel, finish));
     }
-    if (severalGroups && single.length > 1) {
+    if (severalGroups && single.length > 1 && asks('group-by-group')) {
       const names = single.map((channel) => channel.name).join(' + ');
       const found = groupByGroupWay(model, single, finish);
       // Where one of them alone is quicker than sharing, it stands there by itself already.
@@ -121,7 +131,7 @@ function forEachWay(model: PlanModel, take: Take): void {
         take('group-by-group', finish, { id: null, name: names }, found);
     }
   }
-  if (neighbour === null) return;
+  if (neighbour === null || !asks('resistor')) return;
   if (resistors.length === 0)
     take('resistor', 'over-and-settle', { id: null, name: null }, { reason: "No resistor is on the workshop's list." });
   for (const resistor of resistors)
@@ -129,8 +139,9 @@ function forEachWay(model: PlanModel, take: Take): void {
 }
 
 /** From full and from empty: the one may be sooner, the other nearer to the target and so surer. */
-function fromEnds(model: PlanModel, take: Take): void {
-  const ways = model.groups.length > 1 ? (['terminals', 'group-by-group'] as const) : (['terminals'] as const);
+function fromEnds(model: PlanModel, take: Take, only: OnlyWay | null): void {
+  const all = model.groups.length > 1 ? (['terminals', 'group-by-group'] as const) : (['terminals'] as const);
+  const ways = all.filter((way) => only === null || only.way === way);
   for (const channel of model.input.channels)
     for (const way of ways)
       for (const end of ['full', 'empty'] as const)

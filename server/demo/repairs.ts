@@ -31,6 +31,8 @@ const packs: Record<DemoType, { name: string; perModule: number }> = {
   six: { name: '96 groups in 16 modules', perModule: 6 },
   flat: { name: '96 groups in 24 modules, flat curve', perModule: 4 },
 };
+/** Typed by the manager, V per group; of the others the workshop's own arrivals tell. */
+const usualArrivals: Partial<Record<DemoType, number>> = { three: 3.9 };
 const packTypeId = (type: DemoType): string => `demo-pack-${type}`;
 const packOf = (type: DemoType): PackInput => ({
   moduleTypeId: typeId(type),
@@ -45,7 +47,7 @@ export async function writePackTypes(manager: EntityManager, setUpAt: number): P
     workshopId,
     name: packs[type].name,
     ...packColumnsOf(packOf(type)),
-    usualArrivalVolts: null,
+    usualArrivalVolts: usualArrivals[type] ?? null,
     note: null,
     rev: 1,
     createdAt: setUpAt,
@@ -166,6 +168,19 @@ export async function letSourcesDisagree(deps: Deps, now: number): Promise<void>
     pointsTo: next,
   };
   await addSecondSource(deps, memberOf('suri'), repair.id, source, now - 3 * MINUTE);
+}
+
+/** Booked, and due to come onto the stand later: nobody has read these packs yet. */
+const unread = [
+  { number: 'R-2424', type: 'three', by: 'ines', vehicle: 'Orange estate', bay: 'yard', promisedH: 26, bookedMin: 55 },
+  { number: 'R-2425', type: 'two', by: 'suri', vehicle: 'White hatchback', bay: 'yard', promisedH: 29, bookedMin: 35 },
+] as const;
+
+export async function bookUnread(deps: Deps, now: number): Promise<void> {
+  for (const { number, type, by, vehicle, bay, promisedH, bookedMin } of unread) {
+    const promisedAt = Math.ceil((now + promisedH * HOUR) / (30 * MINUTE)) * 30 * MINUTE;
+    await book(deps, by, number, type, { vehicle, bay }, promisedAt, now - bookedMin * MINUTE);
+  }
 }
 
 const PROVEN_AMONG = ['R-2404', 'R-2403', 'R-2402', 'R-2401', 'R-2400', 'R-2399', 'R-2398'];

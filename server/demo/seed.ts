@@ -14,13 +14,15 @@ import { countWorkshops } from '../repositories/workshops.repository';
 import { invite } from '../services/invitations.service';
 import { inTransaction } from '../services/unit-of-work';
 import { defaultSettings } from '../services/workshop-defaults';
+import { writeCrew } from './crew';
 import { demoWorkshopId } from './demo-workshop';
 import { writeEquipment } from './equipment';
 import { demoHours, demoZone } from './hours';
 import { liveOpenCharges } from './open-charges';
 import { writePast } from './past';
+import { liveOtherWork } from './other-work';
 import { demoPeople, invitedEmail, memberOf, type DemoPerson } from './people';
-import { letSourcesDisagree, proveOne, writePackTypes } from './repairs';
+import { bookUnread, letSourcesDisagree, proveOne, writePackTypes } from './repairs';
 import { writeStock } from './stock';
 import { pairWall } from './wall';
 
@@ -83,9 +85,12 @@ async function writeDemo(deps: Deps, now: number): Promise<void> {
     await manager.update(Workshop, { id: demoWorkshopId }, { chargeCount: made });
     return made;
   });
+  const crew = await writeCrew(deps, zone, now, setUpAt);
   await proveOne(deps, now);
   await liveOpenCharges(deps, now);
   await letSourcesDisagree(deps, now);
+  await bookUnread(deps, now);
+  await liveOtherWork(deps, crew, zone, now);
   await invite(
     deps,
     memberOf('petra'),

@@ -1,10 +1,10 @@
-import { Column, Entity, ForeignKey, PrimaryColumn, Unique } from 'typeorm';
-import { idColumn, textColumn, wholeColumn } from './columns';
+import { Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
+import { idColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
 import { Workshop } from './workshop';
 
-/** An entry of the workshop's own list of skills. */
+/** An entry of the workshop's own list of skills. One that work has named is never deleted, only taken off the list. */
 @Entity({ name: 'skill' })
-@Unique('uq_skill_name', ['workshopId', 'name'])
+@Index('uq_skill_name', ['workshopId', 'name'], { unique: true, where: 'retired_at IS NULL' })
 export class Skill {
   @PrimaryColumn(idColumn('id'))
   id!: string;
@@ -15,6 +15,10 @@ export class Skill {
 
   @Column(textColumn('name'))
   name!: string;
+
+  /** Taken off the list; null: on it. Work that is over keeps its name. */
+  @Column(optionalInstantColumn('retired_at'))
+  retiredAt!: number | null;
 
   @Column(wholeColumn('rev'))
   rev!: number;

@@ -8,15 +8,22 @@ const columns = {
 } as const;
 
 const place = table('place', {
-  columns: [primary(), idOf('workshop_id'), text('name'), text('kind'), whole('rev')],
-  uniques: { uq_place_name: ['workshop_id', 'name'] },
+  columns: [
+    primary(),
+    idOf('workshop_id'),
+    text('name'),
+    text('kind'),
+    instant('retired_at', 'optional'),
+    whole('rev'),
+  ],
+  partial: { uq_place_name: { columns: ['workshop_id', 'name'], where: 'retired_at IS NULL' } },
   checks: { ck_place_kind: "kind IN ('bay','bench')" },
   references: { workshop_id: 'workshop' },
 });
 
 const skill = table('skill', {
-  columns: [primary(), idOf('workshop_id'), text('name'), whole('rev')],
-  uniques: { uq_skill_name: ['workshop_id', 'name'] },
+  columns: [primary(), idOf('workshop_id'), text('name'), instant('retired_at', 'optional'), whole('rev')],
+  partial: { uq_skill_name: { columns: ['workshop_id', 'name'], where: 'retired_at IS NULL' } },
   references: { workshop_id: 'workshop' },
 });
 

@@ -42,6 +42,16 @@ export const eventsOf = listing(ChargeEvent, { at: 'ASC', createdAt: 'ASC', id: 
 export async function insertHolds(manager: EntityManager, holds: ChannelHold[]): Promise<void> {
   if (holds.length > 0) await manager.insert(ChannelHold, holds);
 }
+/** Puts other holds in the place of all that a charge has; only before it is begun, when none of them was ever taken. */
+export async function replaceHolds(
+  manager: EntityManager,
+  workshopId: string,
+  chargeId: string,
+  holds: ChannelHold[],
+): Promise<void> {
+  await manager.delete(ChannelHold, { workshopId, chargeId });
+  await insertHolds(manager, holds);
+}
 export async function updateHold(
   manager: EntityManager,
   workshopId: string,
@@ -117,6 +127,21 @@ export async function replaceAnswer(manager: EntityManager, answer: CheckAnswer)
   const { workshopId, chargeId, code } = answer;
   await manager.update(CheckAnswer, { workshopId, chargeId, code, replacedAt: IsNull() }, { replacedAt: answer.at });
   await manager.insert(CheckAnswer, answer);
+}
+
+/** Takes answers of a charge back: they stay with the instant until which they counted. */
+export async function retireAnswers(
+  manager: EntityManager,
+  workshopId: string,
+  chargeId: string,
+  codes: readonly CheckAnswer['code'][],
+  at: number,
+): Promise<void> {
+  await manager.update(
+    CheckAnswer,
+    { workshopId, chargeId, code: In([...codes]), replacedAt: IsNull() },
+    { replacedAt: at },
+  );
 }
 
 export async function insertEvents(manager: EntityManager, events: ChargeEvent[]): Promise<void> {

@@ -7,6 +7,7 @@ import { RemovedModule } from '../entities/removed-module';
 import { Repair } from '../entities/repair';
 import { RepairEvent } from '../entities/repair-event';
 import { RepairWait } from '../entities/repair-wait';
+import { Work } from '../entities/work';
 
 /** All repairs of a workshop, the deleted ones too; the last booked first. */
 export const allRepairs = (manager: EntityManager, workshopId: string): Promise<Repair[]> =>
@@ -44,16 +45,24 @@ export async function rewriteTexts(
   for (const { id, caption } of await manager.findBy(Photo, of))
     if (caption !== null && cleaned(caption) !== caption)
       await manager.update(Photo, { workshopId, id }, { caption: cleaned(caption) });
+  for (const { id, title, note, dropReason } of await manager.findBy(Work, of)) {
+    const [told, dropped] = [note, dropReason].map((text) => (text === null ? null : cleaned(text)));
+    await manager.update(Work, { workshopId, id }, { title: cleaned(title), note: told, dropReason: dropped });
+  }
   for (const { id, correctionReason } of await manager.findBy(RepairWait, of))
     if (correctionReason !== null && cleaned(correctionReason) !== correctionReason)
       await manager.update(RepairWait, { workshopId, id }, { correctionReason: cleaned(correctionReason) });
 }
 
-/** Empties the stored answers of writes on repairs: each holds a whole repair. Who asks again is told to read it anew. */
+/**
+ * Empties the stored answers of writes on repairs and on work for them: each holds the whole of it. Who asks again is told
+ * to read it anew.
+ */
 export async function forgetAnswersOfRepairs(
   manager: EntityManager,
   workshopId: string,
   empty: { status: number; response: { body: null } },
 ): Promise<void> {
-  await manager.update(IdempotencyKey, { workshopId, route: Like('%/repairs%') }, empty);
+  for (const route of ['%/repairs%', '%/api/work', '%/api/work/%'])
+    await manager.update(IdempotencyKey, { workshopId, route: Like(route) }, empty);
 }

@@ -80,6 +80,20 @@ export async function updateRepair(
   await manager.update(Repair, { workshopId, id }, patch);
 }
 
+/** Id and number of these repairs, those that are over or deleted too. */
+export async function repairRefs(
+  manager: EntityManager,
+  workshopId: string,
+  ids: readonly string[],
+): Promise<Map<string, Pick<Repair, 'id' | 'number'>>> {
+  if (ids.length === 0) return new Map();
+  const rows = await manager.find(Repair, {
+    where: { workshopId, id: In([...ids]) },
+    select: { id: true, number: true },
+  });
+  return new Map(rows.map(({ id, number }) => [id, { id, number }]));
+}
+
 /** Every number of a repair that was ever used, those that only charges name too. */
 export async function repairNumbers(manager: EntityManager, workshopId: string): Promise<string[]> {
   const repairs = await manager.find(Repair, { where: { workshopId }, select: { id: true, number: true } });

@@ -1,6 +1,7 @@
 /** Every routes file of the server; add yours here. */
 import { alertSettingsRoutes } from './alert-settings.routes';
 import { alertsRoutes } from './alerts.routes';
+import { benchPlanRoutes } from './bench-plan.routes';
 import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
 import { customersRoutes } from './customers.routes';
@@ -15,9 +16,11 @@ import { repairsRoutes } from './repairs.routes';
 import { searchRoutes } from './search.routes';
 import { sessionRoutes } from './session.routes';
 import { statusRoutes } from './status.routes';
+import { staffingRoutes } from './staffing.routes';
 import { stockRoutes } from './stock.routes';
 import { waitsRoutes } from './waits.routes';
 import { wallRoutes } from './wall.routes';
+import { workRoutes } from './work.routes';
 import { workshopRoutes } from './workshop.routes';
 
 export const routesModules: RoutesModule[] = [
@@ -37,7 +40,10 @@ export const routesModules: RoutesModule[] = [
   searchRoutes,
   chargesRoutes,
   boardRoutes,
+  benchPlanRoutes,
   alertsRoutes,
   alertSettingsRoutes,
   waitsRoutes,
+  staffingRoutes,
+  workRoutes,
 ];

@@ -112,7 +112,7 @@ export async function candidates(deps: Deps, member: Member, id: string, now: nu
 }
 
 /** Why a spare is not to be had, whatever its numbers; empty: it is. */
-function whyNot(
+export function whyNot(
   spare: Spare,
   reading: SpareReading | undefined,
   charge: SpareCharge | undefined,
@@ -150,7 +150,7 @@ function reckoned(input: PlanInput): Reckoned {
 }
 
 /** Of channels that are alike but for their name, the one that is free first. */
-function distinct(channels: readonly ChannelParameters[]): ChannelParameters[] {
+export function distinct(channels: readonly ChannelParameters[]): ChannelParameters[] {
   const first = new Map<string, ChannelParameters>();
   for (const channel of channels) {
     const { channelId: _id, name: _name, freeInS, ...kind } = channel;

@@ -3,6 +3,7 @@ import type { OddSeen } from '@/calc/live-types';
 import { oddCheckFirst } from '@/shared/contract/odd-check';
 import type { ChargeFile } from './charge-file';
 import { isChecked, promisedAt } from './charge-due';
+import { lastVisitAt } from './charge-look-ins';
 import { restedS } from './charge-progress';
 import { isRunning, type SwapWait } from './charge-stages';
 import { channelNamesOf, handText, stepsOfSwap, titleAtChannel } from './charge-steps';
@@ -115,6 +116,11 @@ export function lookInText(file: ChargeFile): AlertText {
     seen: `A look-in is due. ${stands}.`,
     checkFirst: `Warmth, smell${joined} and the clips, then log what the charger shows.`,
   };
+}
+
+export function lookInMissedText(file: ChargeFile, now: number): AlertText {
+  const since = clockText(lastVisitAt(file), file.workshop.zone, now);
+  return { ...lookInText(file), seen: `Nobody has looked in since ${since}.` };
 }
 
 /** A reading that nothing explains: what was seen, what was expected, what to look at first. */

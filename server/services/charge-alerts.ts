@@ -14,6 +14,7 @@ import {
   chargeDoneText,
   checkDueText,
   isSettledEarly,
+  lookInMissedText,
   lookInText,
   oddText,
   overdueText,
@@ -24,11 +25,12 @@ import { overTemperatureText, overVoltageText, noReadingText, startMissedText, t
 import { overTemperature, overVoltage, silenceOf, startMissedSince } from './charge-causes';
 import { isChecked, overdueSince, TOLD_AGAIN_MS } from './charge-due';
 import type { ChargeFile } from './charge-file';
-import { dueLookIn } from './charge-look-ins';
+import { dueLookIn, missedLookIn } from './charge-look-ins';
 import { readingInstantOf } from './charge-clock';
 import { isUnderWay, swapWait } from './charge-stages';
 import { durationText } from './charge-words';
 import { newId } from './ids';
+import { isAnybodyThere, lookInPerson } from './look-in-person';
 
 /** An alert that comes this much after its cause says so, s. */
 const LATE_S = 120;
@@ -74,14 +76,14 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
       key: 'taper',
       text: taperText(file, now),
     });
-  const missed = startMissedSince(file, now);
-  if (missed !== null)
+  const startMissed = startMissedSince(file, now);
+  if (startMissed !== null)
     wanted.push({
       kind: 'latest-start-missed',
       level: 'amber',
-      since: missed,
-      key: String(missed),
-      text: startMissedText(file, missed, now),
+      since: startMissed,
+      key: String(startMissed),
+      text: startMissedText(file, startMissed, now),
     });
   const silence = silenceOf(file);
   if (silence !== null && silence.dueAt <= now)
@@ -101,7 +103,17 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
       text: stepSwapText(file, swap),
     });
   const lookIn = dueLookIn(file, now);
-  if (lookIn !== null)
+  const missed = missedLookIn(file, now);
+  if (missed !== null)
+    wanted.push({
+      kind: 'look-in-missed',
+      level: 'amber',
+      since: missed.dueAt,
+      key: missed.id,
+      text: lookInMissedText(file, now),
+    });
+  // What was missed is told as that; of those due since it the last is still asked for.
+  if (lookIn !== null && lookIn !== missed)
     wanted.push({ kind: 'look-in-due', level: 'tell', since: lookIn.dueAt, key: lookIn.id, text: lookInText(file) });
   if (isUnderWay(charge.stage)) wanted.push(...readingAlerts(file));
   const late = overdueSince(file, now);
@@ -174,7 +186,7 @@ export async function syncAlerts(
   const { charge } = file;
   const all = await alertsOfCharge(manager, charge.workshopId, charge.id);
   const changes: AlertChanges = { raised: [], changed: [] };
-  const wanted = await askedFor(manager, file, wantedAlerts(file, now));
+  const wanted = await askedFor(manager, file, await withoutUnattended(manager, file, wantedAlerts(file, now), now));
   for (const alert of all.filter((one) => one.clearedAt === null)) {
     const match = wanted.find((one) => one.kind === alert.kind && isCauseOf(one, alert));
     if (match) {
@@ -188,7 +200,8 @@ export async function syncAlerts(
     if (all.some((one) => one.clearedAt === null && one.kind === want.kind)) continue;
     const cause = causeOf(charge.id, want, all);
     if (all.some((one) => one.cause === cause)) continue;
-    const alert = newAlert(file, want, cause, now, dueWas);
+    const personId = await personFor(manager, file, want, now);
+    const alert = newAlert(file, want, cause, personId, now, dueWas);
     await raiseAlert(manager, alert, file.workshop, now);
     all.push(alert);
     changes.raised.push(alert);
@@ -211,7 +224,32 @@ function isToldAgain(want: Wanted, alert: Alert, now: number, dueWas: number | n
   return TOLD_AGAIN_MS.some((wait) => want.since + wait >= dueWas && want.since + wait <= now);
 }
 
-function newAlert(file: ChargeFile, want: Wanted, cause: string, now: number, dueWas: number | null): Alert {
+const isLookIn = ({ kind }: Wanted): boolean => kind === 'look-in-due' || kind === 'look-in-missed';
+
+/** Where charges may run unattended nobody has missed a look-in while nobody is there. It is told when somebody comes. */
+async function withoutUnattended(
+  manager: EntityManager,
+  file: ChargeFile,
+  wanted: Wanted[],
+  now: number,
+): Promise<Wanted[]> {
+  if (file.workshop.unattendedCharges !== true || !wanted.some(({ kind }) => kind === 'look-in-missed')) return wanted;
+  if (await isAnybodyThere(manager, file, now)) return wanted;
+  return wanted.filter(({ kind }) => kind !== 'look-in-missed');
+}
+
+/** Whom it is for: a look-in is whose the bench plan gives it to, all else the charge's own person's. */
+const personFor = async (manager: EntityManager, file: ChargeFile, want: Wanted, now: number): Promise<string | null> =>
+  (isLookIn(want) ? await lookInPerson(manager, file, now) : null) ?? file.charge.personId;
+
+function newAlert(
+  file: ChargeFile,
+  want: Wanted,
+  cause: string,
+  personId: string | null,
+  now: number,
+  dueWas: number | null,
+): Alert {
   const { charge } = file;
   const lateByS = dueWas === null ? 0 : Math.max(0, Math.round((now - Math.max(want.since, dueWas)) / 1000));
   return {
@@ -222,7 +260,7 @@ function newAlert(file: ChargeFile, want: Wanted, cause: string, now: number, du
     level: want.level,
     chargeId: charge.id,
     wallId: null,
-    personId: charge.personId,
+    personId,
     title: want.text.title,
     seen: lateByS >= LATE_S ? `${want.text.seen} Told ${durationText(lateByS)} late.` : want.text.seen,
     checkFirst: want.text.checkFirst,

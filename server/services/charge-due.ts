@@ -2,7 +2,7 @@
 import { latestStartAt, silenceOf } from './charge-causes';
 import type { ChargeFile } from './charge-file';
 import { chargeNow, instantOf } from './charge-clock';
-import { dueLookIn, nextLookIn } from './charge-look-ins';
+import { dueLookIn, nextLookIn, nextMissedAt } from './charge-look-ins';
 import { isRunning, isUnderWay, swapWait } from './charge-stages';
 
 /** A check or a swap that waits is told again after these, ms (look: two rising tones, again after 5 and 15 min). */
@@ -90,7 +90,7 @@ function runInstants(file: ChargeFile, at: number): (number | null)[] {
   }
   if (charge.stage !== 'check-due') {
     const lookIn = dueLookIn(file, at) === null ? nextLookIn(file, at) : upcoming(file, at);
-    instants.push(lookIn?.dueAt ?? null);
+    instants.push(lookIn?.dueAt ?? null, nextMissedAt(file, at));
   }
   return instants;
 }

@@ -1,9 +1,28 @@
 import type { EntityManager } from 'typeorm';
 import type { ChannelHold } from '../entities/channel-hold';
+import type { Charge } from '../entities/charge';
 import { runningHoldsOn, updateHold } from '../repositories/charge-rows.repository';
 import type { ChargeFile } from './charge-file';
 import { isRunning, isWaitingToStart, swapWait } from './charge-stages';
 import { begunStep, stepsOfSwap } from './charge-steps';
+import { newId } from './ids';
+
+/** Every step's channels, reserved for the time that the plan of a charge gives them. */
+export function reservedHolds(charge: Charge): ChannelHold[] {
+  const at = (seconds: number): number => charge.clipOnAt + Math.round(seconds * 1000);
+  return charge.option.steps.flatMap((step, stepIndex) =>
+    step.channelIds.map((channelId) => ({
+      id: newId(),
+      workshopId: charge.workshopId,
+      chargeId: charge.id,
+      stepIndex,
+      channelId,
+      state: 'reserved' as const,
+      fromAt: at(step.startS),
+      toAt: at(step.stopS),
+    })),
+  );
+}
 
 type HoldState = Pick<ChannelHold, 'state' | 'toAt'>;
 

@@ -42,6 +42,32 @@ export function dueLookIn(file: ChargeFile, now: number): LookIn | null {
   return file.lookIns.filter((one) => one.doneAt === null && one.dueAt <= now && one.dueAt > done).at(-1) ?? null;
 }
 
+/** Nobody has come for a look-in when this long has passed, or the interval where that is less, ms. A guess. */
+const MISSED_AFTER_MS = 15 * 60_000;
+const missedAfterMs = ({ charge }: ChargeFile): number =>
+  Math.min(MISSED_AFTER_MS, charge.frozen.workshop.lookInIntervalS * 1000);
+
+/** Open look-ins since the last one that was done; none where the charge asks for none. */
+const openSinceDone = (file: ChargeFile): LookIn[] => {
+  if (!asksForLookIns(file)) return [];
+  const done = lastDone(file.lookIns);
+  return file.lookIns.filter((one) => one.doneAt === null && one.dueAt > done);
+};
+
+/** The first look-in that nobody has come for in time; it stands until somebody looks in. */
+export const missedLookIn = (file: ChargeFile, now: number): LookIn | null =>
+  openSinceDone(file).find((one) => one.dueAt + missedAfterMs(file) <= now) ?? null;
+
+/** When the next look-in will have been missed, epoch ms; null: none is to come. */
+export const nextMissedAt = (file: ChargeFile, now: number): number | null => {
+  const next = openSinceDone(file).find((one) => one.dueAt + missedAfterMs(file) > now);
+  return next === undefined ? null : next.dueAt + missedAfterMs(file);
+};
+
+/** Since when nobody was at the charge: its last look-in, else its start, epoch ms. */
+export const lastVisitAt = ({ charge, lookIns }: ChargeFile): number =>
+  Math.max(charge.startedAt ?? 0, ...lookIns.map(({ doneAt }) => doneAt ?? 0));
+
 /** The next look-in to be shown: one that is due already, else the first to come. */
 export function nextLookIn(file: ChargeFile, now: number): LookIn | null {
   if (!asksForLookIns(file)) return null;

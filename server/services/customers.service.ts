@@ -13,7 +13,9 @@ import {
   removedOfRepairs,
 } from '../repositories/repair-rows.repository';
 import { findRepair, updateRepair } from '../repositories/repairs.repository';
+import { workOfRepairs } from '../repositories/work.repository';
 import { findWorkshop } from '../repositories/workshops.repository';
+import { announceBench } from './announce';
 import { withoutAnswer } from './idempotency.service';
 import { toInstant, toOptionalInstant } from './instants';
 import { repairPageOf } from './repair-dto';
@@ -56,6 +58,7 @@ export async function exportCustomer(deps: Deps, member: Member, id: string, now
   const photos = await photosOfRepairs(manager, workshopId, ids);
   const advised = await advisedOfRepairs(manager, workshopId, ids);
   const events = await eventsOfRepairs(manager, workshopId, ids);
+  const work = await workOfRepairs(manager, workshopId, ids);
   return {
     exportedAt: toInstant(now),
     workshop: (await findWorkshop(manager, workshopId))?.name ?? '',
@@ -75,6 +78,9 @@ export async function exportCustomer(deps: Deps, member: Member, id: string, now
       advised: (advised.get(one.id) ?? []).map(({ text, outcome, detail, agreedBy, agreedAt }) => ({
         ...{ text, outcome, detail, agreedBy, agreedAt: toOptionalInstant(agreedAt) },
       })),
+      work: work
+        .filter(({ repairId }) => repairId === one.id)
+        .map(({ number, title, note, createdAt }) => ({ number, title, note, addedAt: toInstant(createdAt) })),
       photos: (photos.get(one.id) ?? []).map((photo) => ({
         ...{ at: toInstant(photo.at), caption: photo.caption, address: `/api/photos/${photo.id}` },
       })),
@@ -144,5 +150,6 @@ export async function eraseCustomer(
     return { page: await repairPageOf(manager, workshopId, id, now), erased: pages };
   });
   for (const one of erased) announceRepair(deps, workshopId, one, now);
+  if (erased.length > 0) announceBench(deps, workshopId, now);
   return page;
 }

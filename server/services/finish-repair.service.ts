@@ -11,6 +11,7 @@ import { conflict, invalid } from '../errors/domain-error';
 import { insertRemovedModule } from '../repositories/repair-rows.repository';
 import { findRepairWithSpare } from '../repositories/repairs.repository';
 import { bare, listText, lowerFirst, titleOf } from './charge-words';
+import { dropWorkOfRepair, restoreWorkOfRepair } from './finish-work.service';
 import { newId } from './ids';
 import { conditionBlock, conditionOf } from './module-conditions';
 import { repairFacts } from './repair-facts';
@@ -51,7 +52,7 @@ export const handOverRepair = (
   input: { note: string | null },
   now: number,
 ): Promise<RepairPageDto> =>
-  changeRepair(deps, member, id, now, { stock: true }, ({ file, note }) => {
+  changeRepair(deps, member, id, now, { stock: true, bench: true }, async ({ manager, file, note }) => {
     const condition = conditionBlock(file, repairFacts(file).failing);
     if (condition !== null) throw conflict('module_condition', condition.text);
     const missing = repairSteps(file).flatMap(({ step, state }) =>
@@ -64,6 +65,7 @@ export const handOverRepair = (
         { missing },
       );
     Object.assign(file.repair, { handedOverAt: now, handedOverById: member.personId, handOverNote: input.note });
+    await dropWorkOfRepair(manager, member, file.repair, now);
     const without = missing.length === 0 ? '' : ` without ${listText(missing)}`;
     note(`handed over${without}${input.note === null ? '' : `: ${bare(input.note)}`}`);
   });
@@ -90,27 +92,43 @@ export const deleteRepair = (
   input: { reason: string },
   now: number,
 ): Promise<RepairPageDto> =>
-  changeRepair(deps, member, id, now, { whileIn: ['open', 'handed-over'], stock: true }, ({ file, note }) => {
-    const { open } = repairFacts(file);
-    if (open !== null && file.repair.handedOverAt === null)
-      throw conflict(
-        'charge_open',
-        `${open.spare.label} is on ${titleOf(open.charge)} for it. Drop, stop or fit that charge first.`,
-      );
-    Object.assign(file.repair, { deletedAt: now, deletedById: member.personId, deleteReason: input.reason });
-    note(`deleted: ${bare(input.reason)}`);
-  });
+  changeRepair(
+    deps,
+    member,
+    id,
+    now,
+    { whileIn: ['open', 'handed-over'], stock: true, bench: true },
+    async ({ manager, file, note }) => {
+      const { open } = repairFacts(file);
+      if (open !== null && file.repair.handedOverAt === null)
+        throw conflict(
+          'charge_open',
+          `${open.spare.label} is on ${titleOf(open.charge)} for it. Drop, stop or fit that charge first.`,
+        );
+      Object.assign(file.repair, { deletedAt: now, deletedById: member.personId, deleteReason: input.reason });
+      await dropWorkOfRepair(manager, member, file.repair, now);
+      note(`deleted: ${bare(input.reason)}`);
+    },
+  );
 
 /** Brings a deleted repair back. A spare that another repair has reserved meanwhile stays there. */
 export const restoreRepair = (deps: Deps, member: Member, id: string, now: number): Promise<RepairPageDto> =>
-  changeRepair(deps, member, id, now, { whileIn: ['deleted'], stock: true }, async ({ manager, file, note }) => {
-    const { repair, spare } = file;
-    const other =
-      spare === null || repair.handedOverAt !== null
-        ? null
-        : await findRepairWithSpare(manager, member.workshopId, spare.id);
-    Object.assign(repair, { deletedAt: null, deletedById: null, deleteReason: null });
-    if (other !== null && spare !== null) Object.assign(repair, { spareId: null, spareAt: null, spareById: null });
-    const lost = other === null || spare === null ? '' : `, without ${spare.label}: ${other.number} has it`;
-    note(`brought back${lost}`);
-  });
+  changeRepair(
+    deps,
+    member,
+    id,
+    now,
+    { whileIn: ['deleted'], stock: true, bench: true },
+    async ({ manager, file, note }) => {
+      const { repair, spare } = file;
+      const other =
+        spare === null || repair.handedOverAt !== null
+          ? null
+          : await findRepairWithSpare(manager, member.workshopId, spare.id);
+      await restoreWorkOfRepair(manager, repair);
+      Object.assign(repair, { deletedAt: null, deletedById: null, deleteReason: null });
+      if (other !== null && spare !== null) Object.assign(repair, { spareId: null, spareAt: null, spareById: null });
+      const lost = other === null || spare === null ? '' : `, without ${spare.label}: ${other.number} has it`;
+      note(`brought back${lost}`);
+    },
+  );

@@ -3,7 +3,6 @@ import type { PlanOption } from '@/calc/plan-types';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { KeepPlanRequest, PlanDto } from '@/shared/contract/plan';
 import type { Deps, Member } from '../deps';
-import type { ChannelHold } from '../entities/channel-hold';
 import type { Charge } from '../entities/charge';
 import { conflict, DomainError, invalid, notFound } from '../errors/domain-error';
 import { insertHolds } from '../repositories/charge-rows.repository';
@@ -16,6 +15,7 @@ import {
 } from '../repositories/charges.repository';
 import { chargeCard, chargeDto } from './charge-dto';
 import { loadFile, type ChargeFile } from './charge-file';
+import { reservedHolds } from './charge-holds';
 import { isUnderWay, isWaitingToStart } from './charge-stages';
 import { clockText, durationText, titleOf } from './charge-words';
 import { announce, settle, type Announcement } from './charge-write';
@@ -54,7 +54,7 @@ export async function keepPlan(deps: Deps, member: Member, request: KeepPlanRequ
     charge.topUpOf ??= replaced?.charge.topUpOf ?? null;
     if (replaced !== null) await deleteCharge(manager, member.workshopId, replaced.charge.id);
     await insertCharge(manager, charge);
-    await insertHolds(manager, holdRows(charge));
+    await insertHolds(manager, reservedHolds(charge));
     const file = await loadFile(manager, member.workshopId, charge.id);
     const from = toppedUp ? ` It tops up ${toppedUp.charge.number}.` : '';
     const instead = replaced ? ` In place of ${replaced.charge.number}.` : '';
@@ -201,23 +201,6 @@ function chargeRow(
     createdAt: now,
   };
   return { ...row, nextDueAt: latestStartAt({ charge: row }) };
-}
-
-/** Every step's channels, reserved for the time the plan gives them. */
-function holdRows(charge: Charge): ChannelHold[] {
-  const at = (seconds: number): number => charge.clipOnAt + Math.round(seconds * 1000);
-  return charge.option.steps.flatMap((step, stepIndex) =>
-    step.channelIds.map((channelId) => ({
-      id: newId(),
-      workshopId: charge.workshopId,
-      chargeId: charge.id,
-      stepIndex,
-      channelId,
-      state: 'reserved' as const,
-      fromAt: at(step.startS),
-      toAt: at(step.stopS),
-    })),
-  );
 }
 
 async function closeForTopUp(

@@ -1,4 +1,4 @@
-import { BcryptPool } from './bcrypt-pool';
+import { bcryptPool, type BcryptPool } from './bcrypt-pool';
 
 /** Hashes passwords in worker threads: bcrypt at cost 12 takes a third of a second, in which nobody may wait. */
 export interface Passwords {
@@ -16,7 +16,7 @@ const nobodysHash = '$2b$12$zxjeZeDGgMFjr9x8Ozz74OGkH3id0uA.GhptDggT2Z/LybwXJ7DD
 /** The same letters typed on another keyboard give the same bytes; otherwise a password is taken as it is. */
 const normal = (password: string): string => password.normalize('NFKC');
 
-export function makePasswords(pool = new BcryptPool()): Passwords {
+export function makePasswords(pool: BcryptPool = bcryptPool()): Passwords {
   return {
     hash: async (password) => (await pool.run({ password: normal(password), cost: bcryptCost })) as string,
     async matches(password, hash) {

@@ -4,6 +4,8 @@ import { conflict, notFound, stale } from '../errors/domain-error';
 import { recallLinks } from '../repositories/invitations.repository';
 import { countActiveManagers, findPerson, listPeople, updatePerson } from '../repositories/people.repository';
 import { endSessionsOf } from '../repositories/sessions.repository';
+import { announceBench } from './announce';
+import { giveBackAllOf } from './finish-work.service';
 import { toInstant } from './instants';
 import { personDto } from './people-dto';
 import { inTransaction } from './unit-of-work';
@@ -48,12 +50,14 @@ export async function changePerson(
     if (disabledAt !== null && before.disabledAt === null) {
       await endSessionsOf(manager, workshopId, before.id, now, 'disabled');
       await recallLinks(manager, workshopId, { personId: before.id }, now);
+      await giveBackAllOf(manager, member, before.id, now);
     }
     return { before, after };
   });
   if (after.disabledAt !== null && before.disabledAt === null) deps.hub.end({ personId: after.id }, 'disabled');
   else if (after.role !== before.role) deps.hub.end({ personId: after.id }, 'role-changed');
   deps.hub.toWorkshop(workshopId, 'people:changed', { at: toInstant(now) });
+  if ((after.disabledAt === null) !== (before.disabledAt === null)) announceBench(deps, workshopId, now);
   deps.log.info({ by: member.personId, personId: after.id, role: after.role }, 'person changed');
   return personDto(after);
 }

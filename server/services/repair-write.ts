@@ -10,7 +10,7 @@ import type { RepairEvent } from '../entities/repair-event';
 import { conflict, stale } from '../errors/domain-error';
 import { insertRepairEvents } from '../repositories/repair-rows.repository';
 import { updateRepair } from '../repositories/repairs.repository';
-import { announceStock } from './announce';
+import { announceBench, announceStock } from './announce';
 import { newId } from './ids';
 import { toInstant } from './instants';
 import { repairPage, repairPageOf } from './repair-dto';
@@ -35,6 +35,8 @@ interface RepairChange {
   whileIn?: readonly ('open' | 'handed-over' | 'deleted')[];
   /** The list of spares has to be read again. */
   stock?: boolean;
+  /** Other work goes or comes with it. */
+  bench?: boolean;
 }
 
 /**
@@ -62,6 +64,7 @@ export async function changeRepair(
   const dto = await refusingTaken(work);
   announceRepair(deps, workshopId, dto, now);
   if (change.stock) announceStock(deps, member, now);
+  if (change.bench) announceBench(deps, workshopId, now);
   return dto;
 }
 

@@ -6,6 +6,9 @@ const sentences: [column: string, code: string, text: string][] = [
   ['charge.spare_id', 'spare_taken', 'This spare was put on another charge a moment ago. Take another spare.'],
   ['repair.spare_id', 'spare_reserved', 'This spare was reserved for another repair a moment ago. Take another spare.'],
   ['repair.workshop_id', 'name_taken', 'This number was given to another repair a moment ago. Try again.'],
+  ['staffing.person_id', 'stale', 'Somebody else has given this person hours a moment ago. Look at them again.'],
+  ['work.workshop_id', 'name_taken', 'This number was given to another piece of work a moment ago. Try again.'],
+  ['work_stint.person_id', 'at_work', 'This person has begun other work a moment ago. Look at the plan again.'],
   ['run_stretch.charge_id', 'wrong_stage', 'This charge was begun a moment ago. Look at it again.'],
 ];
 

@@ -13,6 +13,7 @@ import { toInstant } from './instants';
 const deeds: Readonly<Record<string, string>> = {
   planned: 'planned it',
   queued: 'queued it',
+  moved: 'moved it',
   check: 'answered a check',
   started: 'started it',
   reading: 'logged a reading',

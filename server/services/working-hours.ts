@@ -26,8 +26,25 @@ export function closesInSeconds(
   return Math.max(0, ((inside ? opening.to : clipOnAt) - now) / 1000);
 }
 
-/** 'HH:MM' of a day as an instant; a time that the clock jumps over moves to the next that exists. */
-function instantOf(day: DateTime, time: string): number {
+/**
+ * 'HH:MM' of a day as an instant, epoch ms. A time that the clock jumps over becomes the moment of the jump, one that
+ * comes twice its first coming: so a stretch of the day keeps its order, and is as long as it is on the wall.
+ */
+export function instantOf(day: DateTime, time: string): number {
   const [hour, minute] = time.split(':').map(Number);
-  return day.set({ hour, minute, second: 0, millisecond: 0 }).toMillis();
+  const found = day.set({ hour, minute, second: 0, millisecond: 0 });
+  if (found.hour !== hour || found.minute !== minute) return jumpBefore(found);
+  return Math.min(...found.getPossibleOffsets().map((one) => one.toMillis()));
+}
+
+/** The instant at which the clock last changed within the three hours before a time that stands behind a jump. */
+function jumpBefore(after: DateTime): number {
+  let before = after.minus({ hours: 3 }).toMillis();
+  let since = after.toMillis();
+  while (since - before > 1) {
+    const middle = Math.floor((before + since) / 2);
+    if (DateTime.fromMillis(middle, { zone: after.zone }).offset === after.offset) since = middle;
+    else before = middle;
+  }
+  return since;
 }

@@ -15,6 +15,7 @@ const rules: Record<AlertKind, { sound: SoundName; after: readonly number[]; eve
   overdue: { sound: 'overdue', after: [0], everyMs: minute },
   'latest-start-missed': { sound: 'check-due', after: [0] },
   'look-in-due': { sound: 'look-in', after: [0] },
+  'look-in-missed': { sound: 'look-in', after: again },
   'no-reading': { sound: 'look-in', after: again },
   'wall-unseen': { sound: 'look-in', after: [0] },
   // Over a limit of its type nothing waits.

@@ -1,6 +1,7 @@
 import { useMutation } from '@tanstack/react-query';
 import type { PaperQuery } from '@/shared/contract/papers';
 import { api } from './api';
+import { daySheetPath } from './bench-plan';
 import { saveFile } from './save-file';
 
 /** Where sheets are Letter and not A4. */
@@ -15,7 +16,7 @@ export function paperFor(languageTag: string, decimal: '.' | ','): PaperQuery {
 /** Fetches a PDF and saves it on this device. */
 const useSavePaper = () =>
   useMutation({
-    mutationFn: async ({ path, name, query }: { path: string; name: string; query: PaperQuery }) =>
+    mutationFn: async ({ path, name, query }: { path: string; name: string; query: PaperQuery & { day?: string } }) =>
       saveFile(await api.blob(path, { query: { ...query } }), name),
   });
 
@@ -43,6 +44,20 @@ export function useSaveLabel(chargeId: string, name: string) {
         path: `/charges/${chargeId}/label.pdf`,
         name: `label-${name}.pdf`,
         query: { decimal: decimal === ',' ? 'comma' : 'point' },
+      }),
+  };
+}
+
+/** The day sheet of the bench: who does what when, and the charges of each channel. */
+export function useSaveDaySheet(day: string) {
+  const { mutate, ...state } = useSavePaper();
+  return {
+    ...state,
+    save: (decimal: '.' | ',') =>
+      mutate({
+        path: daySheetPath,
+        name: `day-sheet-${day}.pdf`,
+        query: { ...paperFor(navigator.language, decimal), day },
       }),
   };
 }

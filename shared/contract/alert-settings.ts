@@ -20,6 +20,7 @@ const levelsOf: Record<AlertKind, readonly AlertLevel[]> = {
   overdue: ['alarm'],
   'latest-start-missed': ['amber'],
   'look-in-due': ['tell'],
+  'look-in-missed': ['amber'],
   'no-reading': ['amber'],
   'step-swap': ['amber'],
   'odd-reading': ['alarm'],

@@ -225,6 +225,11 @@ export interface StartNowDto {
   /** Rest voltage with which packs of this kind usually arrive, V per group, and from how many of them; 0: typed. */
   usualVolts: number;
   arrivals: number;
+  /**
+   * What to bring the spare to now, V per group: the usual voltage; or the lowest likely one where no channel here could
+   * take it down again for a pack that arrives below.
+   */
+  aimVolts: number;
   spare: { id: string; label: string; shelfPlace: string | null };
   channelName: string;
   /** What it takes now. */

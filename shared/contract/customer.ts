@@ -30,6 +30,8 @@ export interface CustomerExportDto {
       agreedBy: string | null;
       agreedAt: Instant | null;
     }[];
+    /** Other work for it. */
+    work: { number: string; title: string; note: string | null; addedAt: Instant }[];
     photos: { at: Instant; caption: string | null; address: string }[];
     log: { at: Instant; text: string }[];
   }[];

@@ -50,3 +50,11 @@ export interface StaffingDto extends StaffingInput {
   hoursNow: DayHours[];
   rev: number;
 }
+
+/** All that the bench plan knows of people and places. */
+export interface StaffingListDto {
+  /** Everybody who may sign in, by name. */
+  people: StaffingDto[];
+  skills: SkillDto[];
+  places: PlaceDto[];
+}

@@ -58,6 +58,8 @@ export type EndStintInput = z.infer<typeof endStintSchema>;
 export const dropWorkSchema = z.object({ reason });
 export const workQuerySchema = z.object({
   state: z.optional(z.enum(['open', 'over'])),
+  /** That of one repair; left out: of all, and of none. */
+  repairId: z.optional(id),
   page: z.optional(z.string().check(z.regex(/^[1-9]\d{0,5}$/, 'Pages are counted from 1.'))),
 });
 export type WorkQuery = z.infer<typeof workQuerySchema>;

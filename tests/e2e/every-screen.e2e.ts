@@ -7,6 +7,8 @@ import { drawn, member, openHouse, overflow, slowTest, type House, type ScreenSi
 /** Every address of the workshop; those of charges and repairs by the repair's number, one in each stage and step. */
 const screens = [
   '/bench',
+  '/bench-plan',
+  '/bench-plan?days=7',
   '/plan',
   '/plan?spare=demo-spare-S-0422&target=3.912',
   '/plan?spare=demo-spare-S-0391&target=3.912',
@@ -72,6 +74,7 @@ const screens = [
 const ofRole: Record<Exclude<Role, 'manager'>, readonly (typeof screens)[number][]> = {
   foreman: [
     '/bench',
+    '/bench-plan',
     '/repairs/R-2423/second-source',
     '/spares/demo-spare-S-0391',
     '/waits',
@@ -81,6 +84,7 @@ const ofRole: Record<Exclude<Role, 'manager'>, readonly (typeof screens)[number]
   ],
   technician: [
     '/bench',
+    '/bench-plan',
     '/charges/R-2411',
     '/repairs',
     '/repairs/R-2423',

@@ -28,6 +28,7 @@ describeInBrowser('the built web app', () => {
     ['/estimate', 'wide'],
     ['/wall', 'wall'],
     ['/sign-in', 'phone'],
+    ['/bench-plan', 'wide'],
     ['/no/such/page', 'phone'],
   ] as const)(
     '%s opened directly on a %s screen draws words, without an error or a request to elsewhere',

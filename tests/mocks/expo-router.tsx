@@ -9,6 +9,7 @@ export const router = {
   back: vi.fn(),
   canGoBack: () => true,
   setParams: vi.fn(),
+  navigate: vi.fn(),
   dismissTo: vi.fn(),
 };
 export const useRouter = () => router;

@@ -13,6 +13,7 @@ import type { PlanDto } from '@/shared/contract/plan';
 import type { SpareDto } from '@/shared/contract/spare';
 import type { WallCodeDto, WallDto } from '@/shared/contract/wall';
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from './forms';
+import { addBench, type Benched } from './benched';
 import { addRepairs, type Repaired } from './repaired';
 import { created } from './stocked';
 import type { TestAgent, TestServer, TestWorkshop } from './server';
@@ -47,6 +48,8 @@ export interface Furnished {
   /** A spare reserved for a repair. */
   reservedSpareId: string;
   repairs: Repaired;
+  /** Hours, skills, places and other work. */
+  bench: Benched;
   /** A capacity of the spare on the shelf that waits for an answer. */
   capacityId: string;
   invitationId: string;
@@ -79,6 +82,7 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.capacityId,
   furnished.reservedSpareId,
   ...Object.values(furnished.repairs).filter((id) => typeof id === 'string'),
+  ...Object.values(furnished.bench).filter((id) => typeof id === 'string'),
   furnished.invitationId,
   furnished.wallId,
 ];
@@ -257,6 +261,10 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
       spareId: ids.reservedSpareId,
     },
   );
+  const bench = await addBench(
+    { technician, manager },
+    { name, personId: workshop.people.technician.id, repairId: repairs.waitingRepairId },
+  );
   const { url } = await bodyOf<OneUseLinkDto>(
     manager.post('/api/invitations', { email: `nell@${name}.example.com`, role: 'technician' }),
     201,
@@ -276,6 +284,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     ...(await addUndelivered(server, alert, workshop.people.technician)),
     capacityId: capacity.id,
     repairs,
+    bench,
     invitationId: invitation?.id ?? '',
     invitationToken: new URL(url).searchParams.get('token') ?? '',
     ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),

@@ -17,6 +17,8 @@ import { Person } from '@/server/entities/person';
 import { Session } from '@/server/entities/session';
 import { Workshop } from '@/server/entities/workshop';
 import type { LiveEvent, LiveHub } from '@/server/live/hub';
+import { makeBenchSolver } from '@/server/services/bench-plan/bench-solver';
+import { solveTask } from '@/server/services/bench-plan/solve';
 import { signAccessToken } from '@/server/services/access-token';
 import { makeBackups } from '@/server/services/backups';
 import { makeLimits, type LimitName, type LimitRule } from '@/server/services/limits';
@@ -247,6 +249,8 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     outbox: { poke: () => {}, pushKey: 'BKey', eMail: false },
     lifecycle: { ready: true, startedAt: clock.now() },
     passwords,
+    // The same reckoning, on this thread: what the thread itself does has tests of its own.
+    bench: makeBenchSolver({ run: async (task) => solveTask(task), close: async () => {} }),
     secrets: secretsFrom(Buffer.alloc(32, 7)),
     limits: makeLimits(options.limits),
     backups: makeBackups({ dataDir, everyHours: 0, clock, log: makeLog('silent') }),

@@ -13,13 +13,13 @@ import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Forbidden } from '@/shared/ui/states/forbidden';
-import { BoundField, BoundSelect } from '@/shared/ui/forms/bound';
+import { BoundCheck, BoundField, BoundSelect } from '@/shared/ui/forms/bound';
 import { ChangedMeanwhile, differences } from '@/shared/ui/workshop/changed-meanwhile';
 import { FormPart } from '@/shared/ui/workshop/field-grid';
 import { FormFoot } from '@/shared/ui/workshop/form-foot';
 import { FormScreen, Restored } from '@/shared/ui/workshop/form-screen';
 import { HoursFields } from '@/shared/ui/workshop/hours-fields';
-import { hourNames, hourTexts, hourWords } from '@/shared/ui/workshop/settings-form';
+import { hourNames, hourTexts, hourWords, unattendedName } from '@/shared/ui/workshop/settings-form';
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
@@ -108,7 +108,13 @@ function HoursForm({ workshop, onBack }: { workshop: WorkshopDto; onBack: () => 
         hint={`Now ${clock(now, zone || 'UTC', marks)} there. Every time in the app is shown in it.`}
       />
       <FormPart title="Working hours" note="When somebody is there to clip on and to look in.">
-        <HoursFields form={f.form} />
+        <HoursFields form={f.form} name="workingHours" />
+        <BoundCheck
+          form={f.form}
+          name="unattendedCharges"
+          title={unattendedName}
+          meaning="Overnight, in breaks, at weekends. Not ticked: a charge is planned only where somebody can look in."
+        />
       </FormPart>
     </FormScreen>
   );

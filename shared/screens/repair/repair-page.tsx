@@ -29,6 +29,7 @@ import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { Surface } from '@/shared/ui/theme/surface';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+import { RepairWorkPart } from '../work/repair-work-part';
 import { CustomerPart } from './customer-part';
 import { HandOverPart } from './hand-over-part';
 import { NextButton } from './next-button';
@@ -94,6 +95,7 @@ export function RepairPage({
         onRecord={mayWrite && mayAdvise ? () => setSheet({ kind: 'removed' }) : null}
       />
       <HandOverPart repair={repair} now={now} mayWrite={mayAdvise} />
+      <RepairWorkPart repair={repair} now={now} onGo={onGo} />
       <WaitPart
         waits={repair.wait}
         now={now}

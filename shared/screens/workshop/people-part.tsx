@@ -4,6 +4,7 @@ import { useNow } from '@/shared/client/clock';
 import { useGate } from '@/shared/client/gate';
 import { partState } from '@/shared/client/part-state';
 import { useInvitations, usePeople, useRecallInvitation } from '@/shared/client/people';
+import { useStaffing } from '@/shared/client/staffing';
 import type { InvitationDto } from '@/shared/contract/people';
 import { ProblemLine } from '@/shared/ui/auth/problem-line';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
@@ -14,6 +15,7 @@ import { whoMay } from '@/shared/ui/workshop/may-change';
 import { PeopleTable } from '@/shared/ui/workshop/people-table';
 import { roleWords } from '@/shared/ui/workshop/role-words';
 import { SectionBlock } from '@/shared/ui/workshop/section-block';
+import { skillNames } from '@/shared/ui/workshop/staffing-form';
 import type { PartProps } from './part-props';
 import { useGo } from './use-go';
 
@@ -25,6 +27,8 @@ export function PeoplePart({ titled }: PartProps) {
   const gate = useGate('people:write');
   const people = usePeople();
   const invitations = useInvitations(gate.may);
+  // Beside the names only: where it is not known yet, the column stays empty.
+  const staffing = useStaffing().data;
   const recall = useRecallInvitation();
   const [asked, setAsked] = useState<InvitationDto | null>(null);
   const retry = () => {
@@ -64,6 +68,12 @@ export function PeoplePart({ titled }: PartProps) {
         {(found) => (
           <PeopleTable
             people={found.flatMap(({ person }) => person ?? [])}
+            skillsOf={(id) =>
+              skillNames(
+                staffing?.people.find(({ person }) => person.id === id)?.skillIds ?? [],
+                staffing?.skills ?? [],
+              )
+            }
             invitations={found.flatMap(({ invitation }) => invitation ?? [])}
             now={now}
             mayChange={gate.may}

@@ -17,6 +17,7 @@ const marks: Record<AlertKind, StageMark> = {
   overdue: 'overdue',
   'latest-start-missed': 'queued',
   'look-in-due': 'queued',
+  'look-in-missed': 'check-due',
   'no-reading': 'queued',
   'step-swap': 'check-due',
   'odd-reading': 'overdue',
@@ -43,6 +44,7 @@ export function whose(alert: AlertDto, personId: string): string {
 /** What a reading answers. */
 const asksForReading: readonly AlertKind[] = [
   'look-in-due',
+  'look-in-missed',
   'no-reading',
   'odd-reading',
   'no-current',

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { View } from 'react-native';
 import type { ChargeCardDto } from '@/shared/contract/charge';
 import { benchOrder, isUnderWay, type CardClock } from '../charge/card-model';
@@ -5,6 +6,7 @@ import { Columns } from '../screen/columns';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { useBreakpoint } from '../theme/use-breakpoint';
+import type { RibbonDock } from '../charge/card-ribbon';
 import { BenchCallOut } from './bench-call-out';
 import { BenchRow } from './bench-row';
 import { BenchTable } from './bench-table';
@@ -21,17 +23,26 @@ export function BenchList({
   at,
   lagLimitVolts,
   old,
+  docks,
+  next,
+  foot,
   onGo,
 }: {
   charges: readonly ChargeCardDto[];
   at: CardClock;
   lagLimitVolts?: number;
   old: boolean;
+  /** Fills that dock under the ribbons of the charges they wait for. */
+  docks?: readonly RibbonDock[];
+  /** After what needs somebody: the own work that is to be done now. */
+  next?: ReactNode;
+  /** After what is to come: what fits the own wait. */
+  foot?: ReactNode;
   onGo: (path: string) => void;
 }) {
   const styles = useStyles();
   const wide = useBreakpoint() === 'wide';
-  const common = { at, lagLimitVolts, old, onGo };
+  const common = { at, lagLimitVolts, old, docks, onGo };
   const ordered = benchOrder(charges, at);
   const calls = ordered.filter(needsSomebody).slice(0, mostCallOuts);
   const rest = ordered.filter((card) => !calls.includes(card));
@@ -46,6 +57,7 @@ export function BenchList({
               <BenchCallOut key={card.id} card={card} at={at} lagLimitVolts={lagLimitVolts} beside={wide} onGo={onGo} />
             ))}
           </View>
+          {next}
           {wide && running.length > 0 ? (
             <BenchTable cards={running} {...common} />
           ) : (
@@ -59,9 +71,9 @@ export function BenchList({
         </View>
       }
       side={
-        later.length === 0 ? undefined : (
+        later.length === 0 && !foot ? undefined : (
           <View>
-            {wide ? (
+            {wide && later.length > 0 ? (
               <Txt kind="heading" heading={2}>
                 {headingOf(later)}
               </Txt>
@@ -69,6 +81,7 @@ export function BenchList({
             {later.map((card) => (
               <BenchRow key={card.id} card={card} {...common} />
             ))}
+            {foot}
           </View>
         )
       }

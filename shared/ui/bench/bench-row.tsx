@@ -1,7 +1,7 @@
 import { View } from 'react-native';
 import type { ChargeCardDto } from '@/shared/contract/charge';
 import { CardColumn } from '../charge/card-column';
-import { CardRibbon } from '../charge/card-ribbon';
+import { CardRibbon, type RibbonDock } from '../charge/card-ribbon';
 import { isToCome, isUnderWay, markOf, stageWords, titleAndChannel, type CardClock } from '../charge/card-model';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
@@ -21,11 +21,13 @@ export interface BenchRowProps {
   lead?: boolean;
   /** The link is down: figures turn grey. */
   old?: boolean;
+  /** Fills of the one who looks, by the charge they wait for. */
+  docks?: readonly RibbonDock[];
   onGo: (path: string) => void;
 }
 
 /** One charge on the bench: tag, repair and channel, time left with its band, columns, ribbon. The whole row opens it. */
-export function BenchRow({ card, at, lagLimitVolts, lead = false, old = false, onGo }: BenchRowProps) {
+export function BenchRow({ card, at, lagLimitVolts, lead = false, old = false, docks, onGo }: BenchRowProps) {
   const styles = useStyles();
   const { zone, marks } = useFormats();
   const moments = (instant: string) => moment(Date.parse(instant), zone, at.now, marks);
@@ -53,7 +55,9 @@ export function BenchRow({ card, at, lagLimitVolts, lead = false, old = false, o
         <BenchTime card={card} at={at} old={old} kind={lead ? 'hero' : 'numM'} stacked={lead} />
         <CardColumn card={card} lagLimitVolts={lagLimitVolts} large={lead} />
       </View>
-      {isUnderWay(card) ? <CardRibbon card={card} at={at} height={lead ? 70 : 48} axis={lead} stale={old} /> : null}
+      {isUnderWay(card) ? (
+        <CardRibbon card={card} at={at} height={lead ? 70 : 48} axis={lead} stale={old} docks={docks} />
+      ) : null}
       {old && card.lastReadingAt ? <StaleNote since={moments(card.lastReadingAt)} /> : null}
     </PressableLink>
   );

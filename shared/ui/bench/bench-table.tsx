@@ -71,6 +71,7 @@ function TableRow({
   lead,
   old = false,
   lagLimitVolts,
+  docks,
   onGo,
 }: BenchRowProps & { axis: { from: number; to: number } }) {
   const styles = useStyles();
@@ -99,7 +100,7 @@ function TableRow({
         </Txt>
       </View>
       <View style={styles.ribbon}>
-        <CardRibbon card={card} at={at} height={62} axis={false} shared={axis} stale={old} />
+        <CardRibbon card={card} at={at} height={62} axis={false} shared={axis} stale={old} docks={docks} />
       </View>
       <View style={styles.column}>
         <CardColumn card={card} lagLimitVolts={lagLimitVolts} />

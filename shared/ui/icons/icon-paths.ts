@@ -25,6 +25,8 @@ export const iconPaths = {
   download: 'M12 4v12M7 11l5 5 5-5M4 16v4h16v-4',
   unheard: 'M3 9.5a13 13 0 0 1 18 0M6.5 13.5a8 8 0 0 1 11 0M12 18.5v.1M4 4l16 16',
   rub: 'M9 5h12v14H9l-6-7zM12 9.5l5 5M17 9.5l-5 5',
+  day: 'M4 6h16v14H4zM4 10.5h16M8 3.5V8M16 3.5V8',
+  work: 'M6 5h12v16H6zM9 3h6v4H9zM9 12h6M9 16h4',
   print: 'M7 9V4h10v5M7 17H4V9h16v8h-3M7 14h10v6H7z',
   time: 'M12 20.5a8.5 8.5 0 1 0 0-17 8.5 8.5 0 0 0 0 17zM12 7v5.5l3.500 2.500',
 } as const;

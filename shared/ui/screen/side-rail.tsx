@@ -33,6 +33,8 @@ export function SideRail({ items, current, onGo, person }: NavProps & { person?:
 
 function RailItem({ item, on, onGo }: { item: NavItem; on: boolean; onGo: NavProps['onGo'] }) {
   const styles = useStyles();
+  // On the tablet's narrow rail two words stand under each other.
+  const wide = useBreakpoint() === 'wide';
   return (
     <PressableLink
       href={item.href}
@@ -48,7 +50,14 @@ function RailItem({ item, on, onGo }: { item: NavItem; on: boolean; onGo: NavPro
           <Badge count={item.count} />
         </View>
       ) : null}
-      <Txt kind="small" tone={on ? 'ink' : 'ink2'} bold={on} align="center" numberOfLines={1} style={styles.word}>
+      <Txt
+        kind="small"
+        tone={on ? 'ink' : 'ink2'}
+        bold={on}
+        align="center"
+        numberOfLines={wide ? 1 : 2}
+        style={styles.word}
+      >
         {item.title}
       </Txt>
     </PressableLink>

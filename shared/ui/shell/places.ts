@@ -4,7 +4,7 @@ import type { NavItem } from '../screen/nav-items';
 export interface Place {
   /** Key in the bottom bar; null inside a task, whose foot replaces the bar. */
   tab: 'bench' | 'repairs' | 'spares' | 'alerts' | 'more' | null;
-  rail: 'bench' | 'repairs' | 'spares' | 'alerts' | 'waits' | 'workshop' | 'more';
+  rail: 'bench' | 'bench-plan' | 'repairs' | 'spares' | 'alerts' | 'waits' | 'workshop' | 'more';
 }
 
 /** Screens that show the bottom bar. Everything else is a task with Back at its head and its next step at its foot. */
@@ -14,6 +14,9 @@ const tabs: Readonly<Record<string, Place['tab']>> = {
   '/spares': 'spares',
   '/alerts': 'alerts',
   '/more': 'more',
+  '/bench-plan': 'more',
+  '/my-day': 'bench',
+  '/work': 'more',
   '/waits': 'more',
   '/workshop': 'more',
 };
@@ -23,8 +26,8 @@ export function placeOf(path: string): Place {
   const bare = path.replace(/\/+$/, '') || '/';
   const first = bare.split('/')[1] ?? '';
   const rail =
-    (['repairs', 'spares', 'alerts', 'waits', 'workshop', 'more'] as const).find(
-      (key) => key === (first === 'me' ? 'more' : first),
+    (['bench-plan', 'repairs', 'spares', 'alerts', 'waits', 'workshop', 'more'] as const).find(
+      (key) => key === (first === 'me' || first === 'work' ? 'more' : first),
     ) ?? 'bench';
   return { tab: tabs[bare] ?? null, rail };
 }
@@ -62,9 +65,17 @@ export const tabItems = ({ alerts, repairs }: PlaceCounts): NavItem[] => [
   { key: 'more', title: 'More', icon: 'more', href: '/more' },
 ];
 
-/** The places of tablet and desk; the waits only for those who may read them. */
-export const railItems = ({ alerts, repairs, seesWaits }: PlaceCounts & { seesWaits: boolean }): NavItem[] => [
+/** The places of tablet and desk; the plan and the waits only for those who may. */
+export const railItems = ({
+  alerts,
+  repairs,
+  plansBench,
+  seesWaits,
+}: PlaceCounts & { plansBench: boolean; seesWaits: boolean }): NavItem[] => [
   bench,
+  ...(plansBench
+    ? ([{ key: 'bench-plan', title: 'Bench plan', icon: 'plan', href: '/bench-plan' }] satisfies NavItem[])
+    : []),
   repairsWith(repairs),
   spares,
   alertsWith(alerts),
@@ -82,7 +93,14 @@ const titles: Readonly<Record<string, string>> = {
   approve: 'Approve a wall',
   '+not-found': 'Not here',
   bench: 'Bench',
+  'bench-plan': 'Bench plan',
   plan: 'Plan a charge',
+  'my-day': 'My day',
+  'work/index': 'Other work',
+  'work/new': 'Add other work',
+  'work/[id]': 'Other work',
+  'work/[id]/index': 'Other work',
+  'work/[id]/edit': 'Change other work',
   more: 'More',
   'me/index': 'Name and password',
   'me/alerts': 'Alerts and where they go',
@@ -108,6 +126,9 @@ const titles: Readonly<Record<string, string>> = {
   'workshop/limits': 'Limits',
   'workshop/hours': 'Name and hours',
   'workshop/people/[id]': 'Person',
+  'workshop/staffing/[id]': 'Hours of a person',
+  'workshop/skills/[id]': 'Skill',
+  'workshop/places/[id]': 'Place',
   'workshop/chargers/[id]': 'Charger',
   'workshop/module-types/[id]': 'Module type',
   'workshop/pack-types/[id]': 'Pack type',

@@ -44,7 +44,9 @@ export function DockLane({
         const wide = Math.max(0, Math.min(width, toX(at.toS)) - left - 1);
         const words = label ?? title;
         const dock = (
-          <View style={[styles.dock, styles[kind], { height }, wide < 64 && styles.narrow]}>
+          <View
+            style={[styles.dock, styles[kind], { height }, wide < 64 && styles.narrow, kind === 'free' && styles.tight]}
+          >
             {wide < wordRoom ? null : (
               <Txt
                 kind="small"
@@ -97,8 +99,16 @@ const useStyles = makeStyles(({ colors }) => ({
     overflow: 'hidden',
   },
   narrow: { paddingLeft: 4, paddingRight: 2 },
+  // Its minutes are all a free stretch says: they need the room more than the air.
+  tight: { paddingHorizontal: 2 },
   fill: { backgroundColor: colors.sheet, borderWidth: stroke.control, borderColor: colors.ink, borderLeftWidth: 5 },
-  free: { borderWidth: stroke.control, borderColor: colors.edge, borderStyle: 'dashed' },
+  free: {
+    borderWidth: stroke.control,
+    borderColor: colors.edge,
+    borderStyle: 'dashed',
+    backgroundColor: colors.ground,
+  },
   own: { backgroundColor: colors.well },
-  break: { alignItems: 'center' },
+  // A line of now behind it would go through its word.
+  break: { alignItems: 'center', backgroundColor: colors.ground },
 }));

@@ -64,3 +64,9 @@ export function spanTicks({
   }
   return ticks;
 }
+
+export type TickAnchor = 'start' | 'middle' | 'end';
+
+/** Where a tick's word stands: at an end of the axis it is pushed inside, so that nothing is cut. */
+export const tickAnchor = (x: number, width: number, snap: boolean): TickAnchor =>
+  snap && x < 12 ? 'start' : snap && x > width - 12 ? 'end' : 'middle';

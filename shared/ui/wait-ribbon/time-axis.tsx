@@ -2,15 +2,9 @@ import { StyleSheet } from 'react-native';
 import { G, Path, Svg, Text as SvgText } from 'react-native-svg';
 import { useTheme } from '../theme/theme';
 import { faceStacks } from '../theme/tokens';
-import type { Tick } from './ticks';
+import { tickAnchor, type Tick } from './ticks';
 
 const n = (value: number) => Math.round(value * 100) / 100;
-
-export type TickAnchor = 'start' | 'middle' | 'end';
-
-/** Where a tick's word stands: at an end of the axis it is pushed inside, so that nothing is cut. */
-export const tickAnchor = (x: number, width: number, snap: boolean): TickAnchor =>
-  snap && x < 12 ? 'start' : snap && x > width - 12 ? 'end' : 'middle';
 
 /** The hours under one ribbon, or over several rows. Readers hear the times from the ribbons. */
 export function TimeAxis({

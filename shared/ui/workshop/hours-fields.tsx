@@ -1,34 +1,51 @@
-import { useController } from 'react-hook-form';
+import { useController, type FieldPath, type FieldValues } from 'react-hook-form';
 import { View } from 'react-native';
+import type { TypedForm } from '../forms/bound';
 import { CheckBox } from '../primitives/check-box';
 import { TimeField } from '../primitives/time-field';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
-import type { TypedForm } from '../forms/bound';
 import { weekDays, type HourTexts } from './settings-form';
+
+type Days = HourTexts['workingHours'];
+interface Wrong {
+  message?: string;
+  [day: number]: { from?: { message?: string }; to?: { message?: string } } | undefined;
+}
 
 const usual = { from: '08:00', to: '17:00' };
 
-/** Seven days, Monday first: open from and to, or closed. */
-export function HoursFields({ form }: { form: TypedForm<HourTexts> }) {
+/** Seven days, Monday first: from and to, or none at all. */
+export function HoursFields<V extends FieldValues>({
+  form,
+  name,
+  off = 'closed',
+}: {
+  form: TypedForm<V>;
+  /** Where the seven days stand in the form. */
+  name: FieldPath<V>;
+  /** What a day without hours is called. */
+  off?: string;
+}) {
   const styles = useStyles();
-  const { field, formState } = useController({ control: form.control, name: 'workingHours' });
-  const wrong = formState.errors.workingHours;
-  const change = (index: number, day: HourTexts['workingHours'][number]) =>
-    field.onChange(field.value.map((present, i) => (i === index ? day : present)));
+  const { field, fieldState } = useController<V>({ control: form.control as never, name });
+  const days = field.value as Days;
+  const wrong = fieldState.error as Wrong | undefined;
+  const change = (index: number, day: Days[number]) =>
+    field.onChange(days.map((present, i) => (i === index ? day : present)));
   return (
     <View>
-      {weekDays.map((name, index) => {
-        const day = field.value[index] ?? null;
+      {weekDays.map((title, index) => {
+        const day = days[index] ?? null;
         const error = (side: 'from' | 'to') => wrong?.[index]?.[side]?.message;
         return (
-          <View key={name} role="group" aria-label={name} style={styles.day}>
+          <View key={title} role="group" aria-label={title} style={styles.day}>
             <View style={styles.name}>
               <CheckBox
                 checked={day !== null}
                 onChange={(open) => change(index, open ? usual : null)}
-                title={name}
-                meaning={day === null ? 'closed' : undefined}
+                title={title}
+                meaning={day === null ? off : undefined}
               />
             </View>
             {day === null ? null : (

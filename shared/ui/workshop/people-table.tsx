@@ -17,6 +17,7 @@ const hereMs = 3 * 60_000;
 export function PeopleTable({
   people,
   invitations,
+  skillsOf,
   now,
   mayChange,
   onEdit,
@@ -24,6 +25,8 @@ export function PeopleTable({
 }: {
   people: readonly PersonDto[];
   invitations: readonly InvitationDto[];
+  /** 'packs, brakes'; '' where none are known. */
+  skillsOf: (personId: string) => string;
   now: number;
   mayChange: boolean;
   onEdit: (person: PersonDto) => void;
@@ -75,6 +78,14 @@ export function PeopleTable({
           share: 2.5,
           tone: 'ink2',
           cell: (row) => ('person' in row ? row.person.email : row.invitation.email),
+        },
+        {
+          key: 'skills',
+          title: 'Skills, for fills',
+          phone: 'none',
+          share: 1.5,
+          tone: 'ink2',
+          cell: (row) => ('person' in row ? skillsOf(row.person.id) : ''),
         },
         {
           key: 'seen',

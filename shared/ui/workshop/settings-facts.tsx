@@ -3,7 +3,7 @@ import { useFormats } from '../format/formats';
 import { EN_DASH, NBSP } from '../format/marks';
 import { FactList } from '../primitives/fact-list';
 import { typedNumber } from './numbers-typed';
-import { dayWords, limitFields, technicianDecidesName, weekDays } from './settings-form';
+import { dayWords, limitFields, technicianDecidesName, unattendedName, weekDays } from './settings-form';
 
 /** The limits as they stand. */
 export function LimitFacts({ workshop }: { workshop: WorkshopDto }) {
@@ -11,9 +11,9 @@ export function LimitFacts({ workshop }: { workshop: WorkshopDto }) {
   return (
     <FactList
       facts={[
-        ...limitFields.map(({ key, name, unit }) => ({
+        ...limitFields.map(({ key, name, unit, usual }) => ({
           name,
-          value: `${key === 'toleranceMillivolts' ? '±' : ''}${typedNumber(workshop[key], 0, marks)}${NBSP}${unit}`,
+          value: `${key === 'toleranceMillivolts' ? '±' : ''}${typedNumber(workshop[key] ?? usual, 0, marks)}${NBSP}${unit}`,
         })),
         { name: technicianDecidesName, value: workshop.technicianDecides === true ? 'yes' : 'no' },
       ]}
@@ -29,6 +29,7 @@ export function HourFacts({ workshop }: { workshop: WorkshopDto }) {
         { name: 'Name', value: workshop.name },
         { name: 'Its clock', value: workshop.zone.replaceAll('_', ' ') },
         ...sameDays(workshop.workingHours).map(({ days, hours }) => ({ name: days, value: hours })),
+        { name: unattendedName, value: workshop.unattendedCharges === true ? 'yes' : 'no' },
       ]}
     />
   );

@@ -9,6 +9,8 @@ export interface LimitTexts {
   lookInMinutes: string;
   inrushLimitC: string;
   lagLimitMillivolts: string;
+  lookInVisitMinutes: string;
+  fitMinutes: string;
   passOnTellMinutes: string;
   passOnAmberMinutes: string;
   passOnAlarmMinutes: string;
@@ -17,7 +19,17 @@ export interface LimitTexts {
 }
 export type LimitKey = Exclude<keyof LimitTexts, 'technicianDecides' | 'baseRev'>;
 
-export const limitFields: readonly { key: LimitKey; name: string; unit: string; whole?: boolean; meaning: string }[] = [
+/** A limit, its name, and what stands for it in a workshop that never set it. */
+interface LimitField {
+  key: LimitKey;
+  name: string;
+  unit: string;
+  whole?: boolean;
+  meaning: string;
+  usual?: number;
+}
+
+export const limitFields: readonly LimitField[] = [
   {
     key: 'toleranceMillivolts',
     name: 'Tolerance',
@@ -39,12 +51,28 @@ export const limitFields: readonly { key: LimitKey; name: string; unit: string; 
     meaning: 'while current flows; later it alarms',
   },
   {
+    key: 'lookInVisitMinutes',
+    name: 'A look-in takes',
+    unit: 'min',
+    whole: true,
+    meaning: 'off the work that somebody does meanwhile',
+    usual: 5,
+  },
+  {
     key: 'inrushLimitC',
     name: 'Inrush limit',
     unit: 'C',
     meaning: 'joining groups in parallel, times the capacity in an hour',
   },
   { key: 'lagLimitMillivolts', name: 'Lag limit', unit: 'mV', meaning: 'a group this far behind the others is odd' },
+  {
+    key: 'fitMinutes',
+    name: 'A fit takes',
+    unit: 'min',
+    whole: true,
+    meaning: 'kept free for it in the bench plan, once the module is ready',
+    usual: 60,
+  },
   {
     key: 'passOnAlarmMinutes',
     name: 'An alarm goes on after',
@@ -74,10 +102,9 @@ export const limitNames: Readonly<Record<string, string>> = {
 };
 
 export const limitTexts = (workshop: WorkshopDto, marks: LocaleMarks): LimitTexts => ({
-  ...(Object.fromEntries(limitFields.map(({ key }) => [key, typedNumber(workshop[key], 0, marks)])) as Record<
-    LimitKey,
-    string
-  >),
+  ...(Object.fromEntries(
+    limitFields.map(({ key, usual }) => [key, typedNumber(workshop[key] ?? usual, 0, marks)]),
+  ) as Record<LimitKey, string>),
   technicianDecides: workshop.technicianDecides === true,
   baseRev: workshop.rev,
 });
@@ -87,6 +114,7 @@ export interface HourTexts {
   zone: string;
   /** Monday first; null: closed. */
   workingHours: ({ from: string; to: string } | null)[];
+  unattendedCharges: boolean;
   baseRev: number;
 }
 
@@ -94,6 +122,7 @@ export const hourTexts = (workshop: WorkshopDto): HourTexts => ({
   name: workshop.name,
   zone: workshop.zone,
   workingHours: workshop.workingHours,
+  unattendedCharges: workshop.unattendedCharges === true,
   baseRev: workshop.rev,
 });
 
@@ -102,14 +131,18 @@ export const weekDays = ['Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday',
 export const dayWords = (day: { from: string; to: string } | null | undefined): string =>
   day ? `${day.from}–${day.to}` : 'closed';
 
+export const unattendedName = 'Charges may run while nobody is there';
+
 /** Name, zone and each day in words: for the table of what differs. */
 export const hourNames: Readonly<Record<string, string>> = {
   name: 'Name',
   zone: 'Its clock',
   ...Object.fromEntries(weekDays.map((day) => [day, day])),
+  unattendedCharges: unattendedName,
 };
-export const hourWords = (texts: HourTexts): Record<string, string> => ({
+export const hourWords = (texts: HourTexts): Record<string, string | boolean> => ({
   name: texts.name,
   zone: texts.zone,
   ...Object.fromEntries(weekDays.map((day, i) => [day, dayWords(texts.workingHours[i])])),
+  unattendedCharges: texts.unattendedCharges,
 });

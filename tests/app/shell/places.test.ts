@@ -14,9 +14,10 @@ describe('places', () => {
     ]);
   });
 
-  it('of the desk hold the waits only for those who may read them', () => {
-    const keys = (seesWaits: boolean) => railItems({ alerts: 0, repairs: 0, seesWaits }).map(({ key }) => key);
-    expect(keys(true)).toEqual(['bench', 'repairs', 'spares', 'alerts', 'waits', 'workshop']);
+  it('of the desk hold the bench plan and the waits only for those who may', () => {
+    const keys = (may: boolean) =>
+      railItems({ alerts: 0, repairs: 0, plansBench: may, seesWaits: may }).map(({ key }) => key);
+    expect(keys(true)).toEqual(['bench', 'bench-plan', 'repairs', 'spares', 'alerts', 'waits', 'workshop']);
     expect(keys(false)).toEqual(['bench', 'repairs', 'spares', 'alerts', 'workshop']);
   });
 
@@ -32,6 +33,7 @@ describe('places', () => {
     ['/repairs', 'repairs', 'repairs'],
     ['/spares', 'spares', 'spares'],
     ['/more', 'more', 'more'],
+    ['/bench-plan', 'more', 'bench-plan'],
     ['/waits', 'more', 'waits'],
     ['/workshop', 'more', 'workshop'],
   ])('%s shows the bottom bar with %s', (path, tab, rail) => {

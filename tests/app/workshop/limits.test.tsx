@@ -129,6 +129,17 @@ describe('the limits of the workshop', () => {
     expect(server.writes()[0]?.body).toMatchObject({ technicianDecides: true, toleranceMillivolts: 5 });
   });
 
+  it('takes 5 min for a look-in and 60 for a fit until they are set, and sends what was typed', async () => {
+    open('manager');
+    server.answers['PATCH /api/workshop'] = () => Response.json({ ...workshop, rev: 5 });
+    expect((await field('A look-in takes')).value).toBe('5');
+    expect((await field('A fit takes')).value).toBe('60');
+    await type('A fit takes', '45');
+    save();
+    await waitFor(() => expect(router.back).toHaveBeenCalledOnce());
+    expect(server.writes()[0]?.body).toMatchObject({ lookInVisitMinutes: 5, fitMinutes: 45 });
+  });
+
   it('is for reading only to a technician, and says who may change it', async () => {
     open('technician');
     await screen.findByText('Changed by a manager. Here that is Hella Brandt.');

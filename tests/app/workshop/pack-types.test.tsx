@@ -53,6 +53,7 @@ describe('a pack type', () => {
     expect(server.writes()).toEqual([]);
     await type(/^Module of each group/, '3 left, 3 left, 1, 1, 2, 2');
     await type(/^Bleed current/, '0,12');
+    await type(/^Usually arrives at/, '3,71 V');
     fireEvent.click(await press('Save the pack type'));
     await waitFor(() => expect(state.back).toHaveBeenCalled());
     expect(server.writes()).toMatchObject([
@@ -60,6 +61,7 @@ describe('a pack type', () => {
         path: '/api/pack-types',
         body: {
           name: 'Van pack',
+          usualArrivalVolts: 3.71,
           pack: { groupCount: 6, positionOfGroup: pack.positionOfGroup, bleedAmps: 0.12, aimMillivolts: 10 },
         },
       },

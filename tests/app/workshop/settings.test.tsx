@@ -51,6 +51,7 @@ function open(role: Role, width: 'phone' | 'wide', section?: string, answers: ty
   for (const path of ['chargers', 'meters', 'module-types', 'pack-types', 'resistors', 'walls', 'invitations'])
     server.answers[`GET /api/${path}`] = () => Response.json([]);
   server.answers['GET /api/status'] = () => Response.json(status);
+  server.answers['GET /api/staffing'] = () => Response.json({ people: [], skills: [], places: [] });
   Object.assign(server.answers, answers);
   draw(<Workshop />);
 }
@@ -66,18 +67,21 @@ beforeEach(() => {
 afterEach(() => vi.unstubAllGlobals());
 
 describe('the settings of the workshop', () => {
-  it('are ten rows on the phone, each a way to its part', async () => {
+  it('are thirteen rows on the phone, each a way to its part', async () => {
     open('manager', 'phone');
     fireEvent.click(await screen.findByText('Levelling resistors'));
     expect(router.push).toHaveBeenCalledWith('/workshop?section=resistors');
     expect(screen.queryByRole('region')).toBeNull();
   });
 
-  it('are ten parts on the desk; the walls stand last, at the side of those who approve them', async () => {
+  it('are thirteen parts on the desk; the walls stand last, at the side of those who approve them', async () => {
     open('manager', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(10));
+    await waitFor(() => expect(parts()).toHaveLength(13));
     expect(parts()).toEqual([
       'People and roles',
+      'Hours of people',
+      'Skills',
+      'Places',
       'Chargers and channels',
       'Module types',
       'Pack types',
@@ -94,7 +98,7 @@ describe('the settings of the workshop', () => {
 
   it('can be read by a technician, with who may change them in place of the ways to do so', async () => {
     open('technician', 'wide');
-    await waitFor(() => expect(parts()).toHaveLength(10));
+    await waitFor(() => expect(parts()).toHaveLength(13));
     expect(await screen.findByText('No charger yet. Nothing can be planned without one.')).toBeTruthy();
     expect(screen.queryByText('add a charger')).toBeNull();
     expect(screen.queryByRole('button', { name: 'Make the invitation' })).toBeNull();

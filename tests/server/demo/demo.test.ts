@@ -115,18 +115,17 @@ describe('the open charges of the demo', () => {
 });
 
 describe('the repairs of the demo', () => {
-  it('are one for each charge on the bench, each with a believable reading of 96 groups, and one that is being proven', async () => {
+  it('are one for each charge on the bench, each with a believable reading of 96 groups, one that is being proven and two that nobody has read', async () => {
     const { repairs, counts } = await read<RepairListDto>('/api/repairs');
     const { charges } = await read<BoardDto>('/api/board');
     const proving = repairs.filter(({ step }) => step === 'prove');
-    expect(
-      repairs
-        .map(({ charge }) => charge?.title)
-        .filter(Boolean)
-        .sort(),
-    ).toEqual(charges.map(({ title }) => title).sort());
-    expect([proving.length, counts.open]).toEqual([1, charges.length + 1]);
-    for (const { id, number, charge } of repairs) {
+    expect(repairs.flatMap(({ charge }) => charge?.title ?? []).sort()).toEqual(
+      charges.map(({ title }) => title).sort(),
+    );
+    const unread = repairs.filter(({ step }) => step === 'read');
+    expect(unread.map(({ number }) => number)).toEqual(['R-2424', 'R-2425']);
+    expect([proving.length, counts.open]).toEqual([1, charges.length + 3]);
+    for (const { id, number, charge } of repairs.filter((one) => !unread.includes(one))) {
       const { readings, pack, failing, computed } = await read<RepairPageDto>(`/api/repairs/${id}`);
       const arrival = readings.at(-1)!;
       expect([arrival.stage, arrival.groupVolts.length, pack.groupCount], number).toEqual(['arrival', 96, 96]);
@@ -154,10 +153,10 @@ describe('the repairs of the demo', () => {
     for (const reading of page.readings) expect(Date.parse(reading.at)).toBeLessThan(testNow);
   });
 
-  it('wait by themselves from the target on: all that charge, but neither the ready one nor the undecided one', async () => {
+  it('wait by themselves from the target on: all that charge, but neither the ready one, the undecided one nor the unread ones', async () => {
     const { repairs, counts } = await read<RepairListDto>('/api/repairs');
     const still = repairs.filter(({ waits }) => !waits).map(({ number, step }) => [number, step]);
-    expect(still.filter(([, step]) => step !== 'prove')).toEqual([
+    expect(still.filter(([, step]) => step !== 'prove' && step !== 'read')).toEqual([
       ['R-2423', 'second-source'],
       ['R-2408', 'fit'],
     ]);

@@ -120,6 +120,9 @@ describe('the routes', () => {
   it('that book, start, stop or judge a charge carry an Idempotency-Key', () => {
     const carry = routes.filter(({ handler }) => handler.asks?.idempotent).map(({ name }) => name);
     expect(carry.sort()).toEqual([
+      'POST /api/bench-plan/accept',
+      'POST /api/bench-plan/move',
+      'POST /api/bench-plan/undo/:id',
       'POST /api/charges',
       'POST /api/charges/:id/current-off',
       'POST /api/charges/:id/fit',
@@ -137,6 +140,11 @@ describe('the routes', () => {
       'POST /api/repairs/:id/photos',
       'POST /api/repairs/:id/readings',
       'POST /api/repairs/:id/second-source',
+      'POST /api/work',
+      'POST /api/work/:id/stints/:stintId/begin',
+      'POST /api/work/:id/stints/:stintId/done',
+      'POST /api/work/:id/stints/:stintId/give-back',
+      'POST /api/work/:id/take',
     ]);
   });
 });
@@ -203,6 +211,10 @@ const takenElsewhere = {
   'POST /api/charges/:id/fit': 'charges/lifecycle.test.ts',
   'POST /api/charges/:id/shelve': 'charges/rest-check.test.ts',
   'POST /api/repairs/:id/fit': 'repairs/as-it-is.test.ts',
+  'GET /api/bench-plan/places': 'bench-plan/moves.test.ts',
+  'POST /api/bench-plan/accept': 'bench-plan/proposal.test.ts',
+  'POST /api/bench-plan/move': 'bench-plan/moves.test.ts',
+  'POST /api/bench-plan/undo/:id': 'bench-plan/proposal.test.ts',
 };
 
 describe('being let in', () => {
@@ -298,9 +310,11 @@ describe('another workshop’s ids', () => {
 
 describe('what one’s own workshop is told', () => {
   const read = membersRoutes.filter(({ method }) => method === 'get');
-  it.each(read.map((route) => [route.name, route] as const))('by %s holds nothing of another', async (_name, route) => {
+  it.each(read.map((route) => [route.name, route] as const))('by %s holds nothing of another', async (name, route) => {
     const answer = await isolated(async () => ask(server.agentFor('manager'), route, fitOf(route)));
-    expect(answer.status, tell(answer)).toBe(200);
+    // No better plan is no content; the one charge here is begun and has no other place.
+    const expected = { 'GET /api/bench-plan/proposal': 204, 'GET /api/bench-plan/places': 409 }[name] ?? 200;
+    expect(answer.status, tell(answer)).toBe(expected);
     expectNothingLeaked(answer, '');
   });
 

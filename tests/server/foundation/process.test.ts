@@ -29,6 +29,7 @@ beforeAll(async () => {
     entryPoints: [
       { in: 'server/index.ts', out: 'main' },
       { in: 'server/workers/bcrypt.ts', out: 'workers/bcrypt' },
+      { in: 'server/workers/bench.ts', out: 'workers/bench' },
       { in: 'server/workers/back-up.ts', out: 'workers/back-up' },
     ],
     outdir: bundle,

@@ -8,6 +8,7 @@ import { twoHalves } from '@/tests/support/pictures';
 import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
+import { benchFixtures } from './route-fixtures-bench';
 
 export interface Fit {
   /** Path parameters. */
@@ -322,4 +323,6 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'DELETE /api/me/push-devices/:id': technician((f) => ({ params: { id: f.deviceId } })),
   'GET /api/waits': foreman(),
   'GET /api/waits.csv': foreman(),
+
+  ...benchFixtures,
 };

@@ -3,6 +3,8 @@ import { makeBench, type Bench } from '../charges/bench';
 import type { CustomerExportDto } from '@/shared/contract/customer';
 import type { RepairPageDto } from '@/shared/contract/repair';
 import type { Role } from '@/shared/contract/roles';
+import type { WorkListDto } from '@/shared/contract/work';
+import { workForm } from '@/tests/support/benched';
 import { arrival, makeShop, stripOf, taken, type Shop } from './shop';
 
 const name = 'Élodie Marten (Quay)';
@@ -32,6 +34,8 @@ beforeEach(async () => {
       ...{ text: 'Coolant hose', outcome: 'declined', detail: `${name} rings back`, agreedBy: 'Corin Vell' },
     }),
   );
+  const work = { title: `Wash the car of ${name}`, repairId: first.id, note: `Ring ${contact} when it is clean` };
+  await shop.send('work', workForm(work)).expect(201);
   second = await shop.book({ ...of, customerName: ` ${name.toUpperCase()}` });
   namesake = await shop.book({ ...of, customerContact: 'another@quay.example.com' });
 });
@@ -56,7 +60,9 @@ test('a customer’s data is given out as one JSON file with both repairs, and w
   const data = answer.body as CustomerExportDto;
   expect([data.name, data.contact]).toEqual([name, contact]);
   expect(data.repairs.map(({ number }) => number)).toEqual([second.number, first.number]);
-  const { note, removed, advised, log } = data.repairs[1]!;
+  const { note, removed, advised, work, log } = data.repairs[1]!;
+  expect(work).toMatchObject([{ number: 'W-0001', title: `Wash the car of ${name}` }]);
+  expect(data.repairs[0]!.work).toEqual([]);
   expect(advised).toMatchObject([{ text: 'Coolant hose', outcome: 'declined', agreedBy: 'Corin Vell' }]);
   expect([note, removed[0]!.note]).toEqual([`Ring ${contact} before noon`, `${name.toUpperCase()} agreed`]);
   expect(log.map(({ text }) => text)).toContain(`booked Van of ${name}`);
@@ -75,6 +81,8 @@ test('erasing takes name and contact out of every table, and leaves readings, ta
   expect(page.events[0]!.text).toBe('customer’s data erased');
   expect([stays(page), stripOf(page)]).toEqual([stays(first), stripOf(first)]);
   expect((await shop.seen(second.id)).erased).not.toBeNull();
+  const { work } = (await bench.as('technician').get('/api/work')).body as WorkListDto;
+  expect(work).toMatchObject([{ title: 'Wash the car of [erased]', note: 'Ring [erased] when it is clean' }]);
   // The namesake is another customer, and stays.
   expect(await shop.seen(namesake.id)).toMatchObject({ customerName: name, erased: null });
   await taken(erase(namesake.id));

@@ -53,6 +53,9 @@ describe('when an alert rings', () => {
     expect(rings(alert('charge-done', { level: 'tell' }))).toEqual([0]);
     expect(rings(alert('look-in-due', { level: 'tell' }))).toEqual([0]);
   });
+  it('a look-in that was missed rings at once, after 5 and after 15 min', () => {
+    expect(rings(alert('look-in-missed', { level: 'amber' }))).toEqual([0, 300, 900]);
+  });
   it('an odd reading rings once, for everybody who is there', () => {
     expect(rings(alert('odd-reading', { level: 'alarm' }))).toEqual([0]);
     expect(rings(alert('odd-reading', { level: 'alarm' }), 'bram')).toEqual([0]);

@@ -17,10 +17,10 @@ function listening(cached: { board: number | null; charges?: Record<string, numb
 }
 
 describe('announcements', () => {
-  it('asks for the board and the one charge when the next revision is announced', () => {
+  it('asks for the board, the bench plan and the one charge when the next revision is announced', () => {
     const { old, board } = listening({ board: 4 });
     board(5, 'c1');
-    expect(old).toEqual(['board', 'charges', 'chargers', 'charge c1']);
+    expect(old).toEqual(['board', 'charges', 'chargers', 'bench-plan', 'charge c1']);
   });
 
   it('asks for everything when a revision was missed', () => {

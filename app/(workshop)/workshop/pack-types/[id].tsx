@@ -110,6 +110,16 @@ function Form({
       ) : null}
       <BoundField form={f.form} name="name" label={packTypeNames.name} required readOnly={!gate.may} nextKey="next" />
       <PackFields form={f.form} types={moduleTypes} readOnly={!gate.may} />
+      <BoundField
+        form={f.form}
+        name="usualArrivalVolts"
+        label={packTypeNames.usualArrivalVolts}
+        kind="decimal"
+        unit="V"
+        hint="rest voltage of a group; a spare is brought close to it before the pack is read. Left empty: as your own arrivals tell"
+        readOnly={!gate.may}
+        nextKey="next"
+      />
       <BoundField form={f.form} name="note" label={packTypeNames.note} multiline lines={2} readOnly={!gate.may} />
       {packType ? (
         <Txt kind="small" tone="ink2">

@@ -15,6 +15,7 @@ import { ProblemLine } from '@/shared/ui/auth/problem-line';
 import { Button } from '@/shared/ui/primitives/button';
 import { ChoiceList } from '@/shared/ui/primitives/choice-row';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
+import { Link } from '@/shared/ui/primitives/link';
 import { Rule } from '@/shared/ui/primitives/rule';
 import { useToast } from '@/shared/ui/primitives/toast';
 import { Txt } from '@/shared/ui/primitives/txt';
@@ -63,6 +64,7 @@ export default function Person() {
 }
 
 function PersonForm({ person, onlyManager, onBack }: { person: PersonDto; onlyManager: boolean; onBack: () => void }) {
+  const router = useRouter();
   const toast = useToast();
   const change = useChangePerson();
   const texts = (of: PersonDto) => ({ name: of.name, role: of.role, baseRev: of.rev });
@@ -130,6 +132,11 @@ function PersonForm({ person, onlyManager, onBack }: { person: PersonDto; onlyMa
           </Txt>
         ) : null}
       </View>
+      <Link
+        title="Hours, days off and skills"
+        href={`/workshop/staffing/${person.id}`}
+        onPress={() => router.push(`/workshop/staffing/${person.id}` as Href)}
+      />
       <Rule gap={0} />
       <SignIn person={person} why={why} onRev={(rev) => f.form.setValue('baseRev', rev)} />
     </FormScreen>
