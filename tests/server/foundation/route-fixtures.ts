@@ -8,6 +8,7 @@ import { twoHalves } from '@/tests/support/pictures';
 import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
+import { alertFixtures } from './route-fixtures-alerts';
 import { benchFixtures } from './route-fixtures-bench';
 
 export interface Fit {
@@ -307,22 +308,9 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/search': technician(() => ({ query: 'q=van' })),
 
   'GET /api/board': technician(),
-  'GET /api/alerts': technician(),
-  'POST /api/alerts/:id/take': technician((f) => ({ params: { id: f.alertId } })),
-  'POST /api/alerts/:id/pass': technician((f) => ({
-    params: { id: f.alertId },
-    body: { personId: f.workshop.people.foreman.id },
-  })),
-  'GET /api/alerts/undelivered': manager(),
-  'POST /api/alerts/undelivered/:id/again': manager((f) => ({ params: { id: f.undeliveredId } })),
-  'POST /api/alerts/undelivered/:id/drop': manager((f) => ({ params: { id: f.undeliveredId } })),
-  'GET /api/me/alert-settings': technician(),
-  'PATCH /api/me/alert-settings': technician(() => ({ body: { quiet: { from: '22:00', to: '06:00' } } })),
-  'GET /api/push-key': technician(),
-  'POST /api/me/push-devices': technician(() => ({ body: { kind: 'phone', token: 'ExponentPushToken[new]' } })),
-  'DELETE /api/me/push-devices/:id': technician((f) => ({ params: { id: f.deviceId } })),
   'GET /api/waits': foreman(),
   'GET /api/waits.csv': foreman(),
 
   ...benchFixtures,
+  ...alertFixtures,
 };
