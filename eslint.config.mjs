@@ -10,11 +10,11 @@ const imports = (...patterns) => ({ '@typescript-eslint/no-restricted-imports': 
 
 const serverOnly = {
   regex:
-    '^(node:|express$|typeorm$|better-sqlite3$|socket\\.io$|pino|helmet$|jsonwebtoken$|bcryptjs$|compression$|selfsigned$|reflect-metadata$|rate-limiter-flexible)',
+    '^(node:|express$|typeorm$|better-sqlite3$|web-push$|nodemailer$|expo-server-sdk$|undici$|socket\\.io$|pino|helmet$|jsonwebtoken$|bcryptjs$|compression$|selfsigned$|reflect-metadata$|rate-limiter-flexible)',
   message: 'Runs in the browser: this package works on the server only. Ask the server through the API client.',
 };
 const clientOnly = {
-  regex: '^(react($|-)|react-native|expo($|-|/)|@expo/|@tanstack/|@hookform/|socket\\.io-client$)',
+  regex: '^(react($|-)|react-native|expo($|-(?!server-sdk$)|/)|@expo/|@tanstack/|@hookform/|socket\\.io-client$)',
   message: 'The server draws nothing. What both sides need goes to shared/contract or calc.',
 };
 const noScreens = {

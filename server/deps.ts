@@ -1,6 +1,7 @@
 import type { Logger } from 'pino';
 import type { DataSource } from 'typeorm';
 import type { Role } from '@/shared/contract/roles';
+import type { Outbox } from './alerts/outbox';
 import type { Clock } from './clock';
 import type { Config } from './config';
 import type { Lifecycle } from './lifecycle';
@@ -21,6 +22,8 @@ export interface Deps {
   log: Logger;
   hub: LiveHub;
   sleeper: Sleeper;
+  /** What goes out of the house. */
+  outbox: Outbox;
   lifecycle: Lifecycle;
   /** Hashes and compares off the event loop. */
   passwords: Passwords;

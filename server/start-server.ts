@@ -2,6 +2,8 @@ import type http from 'node:http';
 import type { AddressInfo } from 'node:net';
 import type { Logger } from 'pino';
 import type { DataSource } from 'typeorm';
+import { makeDispatcher } from './alerts/dispatcher';
+import { makeWays } from './alerts/ways/all';
 import { systemClock, type Clock } from './clock';
 import { isEveryAddress, type Config } from './config';
 import { createApp } from './create-app';
@@ -112,7 +114,10 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     const migrations = await migrate(dataSource, config.dataDir, clock.now(), log);
     if (migrations.length > 0) log.info({ migrations }, 'database migrated');
     const hub = makeSocketHub({ config, dataSource, secrets, clock, log });
-    const sleeper = makeSleeper({ dataSource, clock, log, hub });
+    const ways = makeWays(config);
+    const dispatcher = makeDispatcher({ dataSource, clock, log, hub, ways, random: Math.random });
+    const outbox = { poke: dispatcher.poke, pushKey: ways.pushKey, eMail: ways.eMail !== null };
+    const sleeper = makeSleeper({ dataSource, clock, log, hub, outbox });
     const limits = makeLimits();
     const { dataDir, backupHours: everyHours } = config;
     const backups = makeBackups({ dataDir, everyHours, clock, log });
@@ -123,6 +128,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       log,
       hub,
       sleeper,
+      outbox,
       lifecycle,
       passwords,
       bench,
@@ -139,6 +145,8 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     await quietly(sweptPhotos(dataSource, config, clock.now(), log), log, 'the photos were not swept');
     await sleeper.start();
     const port = await listenOn(server, config);
+    // What waits goes out beside the start: a mail server that does not answer must not keep the workshop waiting.
+    const sending = quietly(dispatcher.start(), log, 'the dispatcher did not start');
     lifecycle.ready = true;
     watchProcess(deps);
     backups.start();
@@ -147,6 +155,9 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       const drained = setTimeout(() => server.closeAllConnections(), drainMs);
       await quietly(backups.stop(), log, 'the copying did not stop');
       await quietly(sleeper.stop(), log, 'the sleeper did not stop');
+      await quietly(dispatcher.stop(), log, 'the dispatcher did not stop');
+      await sending;
+      ways.close();
       // Closes the sockets and the server's port; resolves when the last request under way has ended.
       await quietly(hub.close(), log, 'the sockets did not close');
       clearTimeout(drained);

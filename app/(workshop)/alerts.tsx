@@ -11,11 +11,13 @@ import { useMember } from '@/shared/client/session';
 import { armSound, switchSound, useSoundState } from '@/shared/client/sound';
 import { useWorkshop } from '@/shared/client/workshop';
 import type { AlertDto } from '@/shared/contract/alert';
+import { UndeliveredPart } from '@/shared/screens/alerts/undelivered-part';
 import { AlertLists } from '@/shared/ui/alerts/alert-lists';
 import { SoundTool, soundWords } from '@/shared/ui/alerts/sound-tool';
 import { HandOverSheet } from '@/shared/ui/charge/hand-over-sheet';
 import { clock } from '@/shared/ui/format/clock';
 import { useFormats } from '@/shared/ui/format/formats';
+import { Link } from '@/shared/ui/primitives/link';
 import { HeaderBar } from '@/shared/ui/screen/header-bar';
 import { Screen } from '@/shared/ui/screen/screen';
 import { ErrorState } from '@/shared/ui/states/error-state';
@@ -63,6 +65,8 @@ export default function Alerts() {
           alerts={alerts.data}
           now={now}
           onGo={go}
+          above={<UndeliveredPart now={now} offline={offline} />}
+          below={<Link title="Where your alerts go" href="/me/alerts" onPress={() => go('/me/alerts')} />}
           cardOf={(alert) => ({
             card: board?.charges.find((charge) => charge.id === alert.chargeId),
             personId: person.id,

@@ -129,6 +129,13 @@ function Me() {
         href="/me"
         onPress={() => router.navigate('/me' as Href)}
       />
+      <MoreRow
+        icon="alerts"
+        title="Alerts and where they go"
+        meaning="Sound, push, e-mail and quiet hours"
+        href="/me/alerts"
+        onPress={() => router.navigate('/me/alerts' as Href)}
+      />
       <MoreRow title="Signed in on" meaning="Devices, and sign out everywhere" onPress={() => setOpen('sessions')} />
       {waiting > 0 ? (
         <MoreRow

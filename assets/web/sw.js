@@ -2,7 +2,8 @@
 // which the build joins to this one; a number is never kept by either.
 //
 // Notice (from a push, or posted by a page as { type: 'notify', notice }):
-//   { title, body, url, tag }  url: address within this site; tag: one per cause, a later one replaces the earlier.
+//   { title, body, url, tag, id?, turn? }  url: address within this site; tag: one per cause, a later one replaces the
+//   earlier. id and turn: of an alert; what is shown already with the same turn came twice, and makes no noise again.
 
 /** The notice's address, kept within this site. */
 function addressOf(url) {
@@ -14,15 +15,32 @@ function addressOf(url) {
   }
 }
 
+// One after the other: a list that is read while a notice is being shown makes Chromium forget that notice.
+let showing = Promise.resolve();
 function show(notice) {
+  const next = () => put(notice);
+  showing = showing.then(next, next);
+  return showing;
+}
+
+/** Whether the alert is shown already, with the same turn: the server sends again what it does not know to have arrived. */
+async function isShown({ id, tag, turn }) {
+  if (!id || !tag || !self.registration.getNotifications) return false;
+  const there = await self.registration.getNotifications({ tag });
+  return there.some(({ data }) => Boolean(data) && data.turn === turn);
+}
+
+async function put(notice) {
+  const again = await isShown(notice);
   return self.registration.showNotification(notice.title || 'Bidewell', {
     body: notice.body || '',
     tag: notice.tag,
-    renotify: Boolean(notice.tag),
+    // A push must show something, also the second time: the same in its place, without a sound.
+    renotify: Boolean(notice.tag) && !again,
     requireInteraction: true,
     icon: '/icon-192.png',
     badge: '/badge-96.png',
-    data: { url: addressOf(notice.url) },
+    data: { url: addressOf(notice.url), turn: notice.turn },
   });
 }
 

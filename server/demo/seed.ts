@@ -50,6 +50,7 @@ export async function seedDemo(deps: Deps): Promise<void> {
     ...deps,
     hub: { toWorkshop: () => {}, toPerson: () => {}, connected: () => 0, end: () => {} },
     sleeper: { poke: () => {} },
+    outbox: { ...deps.outbox, poke: () => {} },
   };
   try {
     await writeDemo(quiet, startedAt);

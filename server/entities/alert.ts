@@ -1,14 +1,24 @@
 import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
-import type { AlertKind } from '@/shared/contract/alert';
-import { idColumn, instantColumn, optionalIdColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+import type { AlertKind, AlertLevel } from '@/shared/contract/alert';
+import {
+  idColumn,
+  instantColumn,
+  optionalIdColumn,
+  optionalInstantColumn,
+  optionalTextColumn,
+  textColumn,
+  wholeColumn,
+} from './columns';
 import { Charge } from './charge';
 import { Person } from './person';
 import { Workshop } from './workshop';
 
-/** One alert a cause; the cause key makes it so across restarts. */
+/** One alert a cause; the cause key makes it so across restarts. About a charge, or about a wall. */
 @Entity({ name: 'alert' })
 @Unique('uq_alert_cause', ['cause'])
 @Index('ix_alert_open', ['workshopId', 'clearedAt', 'raisedAt'])
+@Index('ix_alert_pass', ['passDueAt'])
+@Index('ix_alert_wall', ['wallId'])
 export class Alert {
   @PrimaryColumn(idColumn('id'))
   id!: string;
@@ -24,11 +34,15 @@ export class Alert {
   kind!: AlertKind;
 
   @Column(textColumn('level'))
-  level!: 'tell' | 'amber' | 'alarm';
+  level!: AlertLevel;
 
   @ForeignKey(() => Charge, { name: 'fk_alert_charge', onDelete: 'CASCADE' })
-  @Column(idColumn('charge_id'))
-  chargeId!: string;
+  @Column(optionalIdColumn('charge_id'))
+  chargeId!: string | null;
+
+  /** The wall it is about. No foreign key (see its migration); walls are never deleted. */
+  @Column(optionalIdColumn('wall_id'))
+  wallId!: string | null;
 
   @ForeignKey(() => Person, { name: 'fk_alert_person' })
   @Column(optionalIdColumn('person_id'))
@@ -59,6 +73,18 @@ export class Alert {
   /** When it was last passed on to whom it is for now. */
   @Column(optionalInstantColumn('passed_at'))
   passedAt!: number | null;
+
+  /** Number of its present turn: whom it is with (see AlertTurn). */
+  @Column({ ...wholeColumn('turn'), default: 0 })
+  turn!: number;
+
+  /** It has gone on to those of this role because nobody took it. */
+  @Column(optionalTextColumn('for_role'))
+  forRole!: 'foreman' | 'manager' | null;
+
+  /** When it goes on if nobody has taken it by then; null: it stays. */
+  @Column(optionalInstantColumn('pass_due_at'))
+  passDueAt!: number | null;
 
   @Column(optionalInstantColumn('cleared_at'))
   clearedAt!: number | null;

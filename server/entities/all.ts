@@ -1,6 +1,8 @@
 /** All entities, listed: globs break in a bundle. */
 import { AdvisedItem } from './advised-item';
 import { Alert } from './alert';
+import { AlertSetting } from './alert-setting';
+import { AlertTurn } from './alert-turn';
 import { BenchChange } from './bench-change';
 import { Channel } from './channel';
 import { ChannelHold } from './channel-hold';
@@ -16,11 +18,13 @@ import { LevellingResistor } from './levelling-resistor';
 import { LookIn } from './look-in';
 import { Meter } from './meter';
 import { ModuleType } from './module-type';
+import { OutboxEntry } from './outbox-entry';
 import { PackReading } from './pack-reading';
 import { PackType } from './pack-type';
 import { Person } from './person';
 import { Photo } from './photo';
 import { Place } from './place';
+import { PushDevice } from './push-device';
 import { RemovedModule } from './removed-module';
 import { Repair } from './repair';
 import { RepairEvent } from './repair-event';
@@ -82,5 +86,9 @@ export const entities = [
   Work,
   WorkStint,
   BenchChange,
+  AlertTurn,
+  OutboxEntry,
+  PushDevice,
+  AlertSetting,
   IdempotencyKey,
 ];

@@ -57,6 +57,16 @@ export class Workshop {
   @Column(optionalWholeColumn('fit_minutes'))
   fitMinutes!: number | null;
 
+  /** Minutes after which an alert nobody has taken goes on, by its level; 0: never, null: as workshops begin. */
+  @Column(optionalWholeColumn('pass_on_tell_minutes'))
+  passOnTellMinutes!: number | null;
+
+  @Column(optionalWholeColumn('pass_on_amber_minutes'))
+  passOnAmberMinutes!: number | null;
+
+  @Column(optionalWholeColumn('pass_on_alarm_minutes'))
+  passOnAlarmMinutes!: number | null;
+
   @Column(wholeColumn('board_rev'))
   boardRev!: number;
 

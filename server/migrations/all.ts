@@ -13,6 +13,7 @@ import { CustomerErased1765600000000 } from './1765600000000-customer-erased';
 import { PackBalance1765800000000 } from './1765800000000-pack-balance';
 import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
 import { BenchPlan1765900000000 } from './1765900000000-bench-plan';
+import { AlertDelivery1767000000000 } from './1767000000000-alert-delivery';
 
 export const migrations = [
   Initial1764600000000,
@@ -29,4 +30,5 @@ export const migrations = [
   PackBalance1765800000000,
   FittedSpare1765810000000,
   BenchPlan1765900000000,
+  AlertDelivery1767000000000,
 ];

@@ -1,4 +1,5 @@
 /** Every routes file of the server; add yours here. */
+import { alertSettingsRoutes } from './alert-settings.routes';
 import { alertsRoutes } from './alerts.routes';
 import { benchPlanRoutes } from './bench-plan.routes';
 import { boardRoutes } from './board.routes';
@@ -41,6 +42,7 @@ export const routesModules: RoutesModule[] = [
   boardRoutes,
   benchPlanRoutes,
   alertsRoutes,
+  alertSettingsRoutes,
   waitsRoutes,
   staffingRoutes,
   workRoutes,

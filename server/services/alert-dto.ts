@@ -16,6 +16,8 @@ export const alertDto = (alert: Alert, people: ReadonlyMap<string, PersonName>):
   chargeId: alert.chargeId,
   title: alert.title,
   for: personRef(people, alert.personId),
+  forRole: alert.forRole,
+  turn: alert.turn,
   seen: alert.seen,
   checkFirst: alert.checkFirst,
   raisedAt: toInstant(alert.raisedAt),

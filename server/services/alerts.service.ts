@@ -1,13 +1,15 @@
 import type { EntityManager } from 'typeorm';
 import type { AlertDto } from '@/shared/contract/alert';
+import { giveAlert, takeAlertNow } from '../alerts/turns';
 import type { Deps, Member } from '../deps';
 import type { Alert } from '../entities/alert';
 import { conflict, invalid, notFound } from '../errors/domain-error';
-import { findAlert, listAlerts, updateAlert } from '../repositories/alerts.repository';
+import { findAlert, listAlerts } from '../repositories/alerts.repository';
 import { insertEvents } from '../repositories/charge-rows.repository';
-import { peopleById, type PersonName } from '../repositories/charge-stock.repository';
+import { findWorkshop, peopleById, type PersonName } from '../repositories/charge-stock.repository';
 import { raiseBoardRev } from '../repositories/charges.repository';
 import { alertDto } from './alert-dto';
+import { lowerFirst } from './charge-words';
 import { newId } from './ids';
 import { toInstant } from './instants';
 import { inTransaction } from './unit-of-work';
@@ -41,7 +43,10 @@ export function takeAlert(deps: Deps, member: Member, id: string, now: number): 
         `${people.get(alert.takenById)?.name ?? 'Somebody'} has it already.`,
         alertDto(alert, people),
       );
-    return { patch: { takenById: member.personId, takenAt: now }, text: `${member.name} has it: ${titleText(alert)}` };
+    return {
+      write: (manager) => takeAlertNow(manager, alert, member.personId, now),
+      text: `${member.name} has it: ${lowerFirst(alert.seen)}`,
+    };
   });
 }
 
@@ -62,20 +67,27 @@ export async function passAlert(
     if (!other) throw notFound('This person');
     if (other.disabledAt !== null) throw invalid({ personId: `${other.name} is disabled. Choose somebody else.` });
     return {
-      patch: { personId, takenById: null, takenAt: null, passedAt: now },
-      text: `${member.name} passed it to ${other.name}: ${titleText(alert)}`,
+      write: async (manager) => {
+        const workshop = await findWorkshop(manager, member.workshopId);
+        if (!workshop) throw notFound('This workshop');
+        return giveAlert(manager, alert, { personId, byId: member.personId, heardFrom: now }, workshop, now);
+      },
+      text: `${member.name} passed it to ${other.name}: ${lowerFirst(alert.seen)}`,
     };
   });
   deps.hub.toPerson(member.workshopId, personId, 'alert:raised', passed);
   return passed;
 }
 
-const titleText = (alert: Alert): string => lower(alert.seen);
-const lower = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);
-
 function refuseCleared(alert: Alert, people: ReadonlyMap<string, PersonName>): void {
   if (alert.clearedAt !== null)
     throw conflict('alert_over', 'This is settled already. There is nothing to take.', alertDto(alert, people));
+}
+
+interface Change {
+  write: (manager: EntityManager) => Promise<Partial<Alert>>;
+  /** For the log of its charge. */
+  text: string;
 }
 
 async function changeAlert(
@@ -83,7 +95,7 @@ async function changeAlert(
   member: Member,
   id: string,
   now: number,
-  decide: (alert: Alert, people: ReadonlyMap<string, PersonName>) => { patch: Partial<Alert>; text: string } | null,
+  decide: (alert: Alert, people: ReadonlyMap<string, PersonName>) => Change | null,
 ): Promise<AlertDto> {
   const { workshopId } = member;
   const { dto, boardRev } = await inTransaction(deps, async (manager: EntityManager) => {
@@ -92,24 +104,24 @@ async function changeAlert(
     const people = await peopleById(manager, workshopId);
     const change = decide(alert, people);
     if (change === null) return { dto: alertDto(alert, people), boardRev: null };
-    await updateAlert(manager, workshopId, id, change.patch);
-    await insertEvents(manager, [
-      {
-        id: newId(),
-        workshopId,
-        chargeId: alert.chargeId,
-        at: now,
-        kind: 'alert',
-        personId: member.personId,
-        text: change.text,
-        createdAt: now,
-      },
-    ]);
+    const patch = await change.write(manager);
+    const { chargeId } = alert;
+    const line = {
+      id: newId(),
+      workshopId,
+      at: now,
+      kind: 'alert',
+      personId: member.personId,
+      text: change.text,
+      createdAt: now,
+    };
+    if (chargeId !== null) await insertEvents(manager, [{ ...line, chargeId }]);
     return {
-      dto: alertDto({ ...alert, ...change.patch }, people),
+      dto: alertDto({ ...alert, ...patch }, people),
       boardRev: await raiseBoardRev(manager, workshopId),
     };
   });
+  deps.outbox.poke();
   if (boardRev !== null) {
     const at = toInstant(now);
     deps.hub.toWorkshop(workshopId, 'alert:changed', { id, at });

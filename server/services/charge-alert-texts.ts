@@ -71,9 +71,11 @@ export function checkDueText(file: ChargeFile): AlertText {
   };
 }
 
-/** Why a check is due before the workshop's minimum rest is over. */
+/** The readings of the rest say that it has settled, before the workshop's minimum rest is over. */
+export const isSettledEarly = (file: ChargeFile): boolean => restedS(file) < file.charge.frozen.workshop.minRestS - 1;
+
 const settledText = (file: ChargeFile): string =>
-  restedS(file) < file.charge.frozen.workshop.minRestS - 1 ? ' Its readings say that it has settled.' : '';
+  isSettledEarly(file) ? ' Its readings say that it has settled.' : '';
 
 export function stepSwapText(file: ChargeFile, wait: SwapWait): AlertText {
   const { charge } = file;

@@ -5,11 +5,15 @@
  */
 import type { EntityManager } from 'typeorm';
 import type { AlertKind } from '@/shared/contract/alert';
+import { askedForOnly, waysOf } from '@/shared/contract/alert-settings';
 import type { Alert } from '../entities/alert';
-import { alertsOfCharge, insertAlert, updateAlert } from '../repositories/alerts.repository';
+import { clearAlert, raiseAlert } from '../alerts/turns';
+import { alertSettingsOf } from '../repositories/alert-settings.repository';
+import { alertsOfCharge } from '../repositories/alerts.repository';
 import {
   chargeDoneText,
   checkDueText,
+  isSettledEarly,
   lookInMissedText,
   lookInText,
   oddText,
@@ -17,6 +21,8 @@ import {
   stepSwapText,
   type AlertText,
 } from './charge-alert-texts';
+import { overTemperatureText, overVoltageText, noReadingText, startMissedText, taperText } from './charge-cause-texts';
+import { overTemperature, overVoltage, silenceOf, startMissedSince } from './charge-causes';
 import { isChecked, overdueSince, TOLD_AGAIN_MS } from './charge-due';
 import type { ChargeFile } from './charge-file';
 import { dueLookIn, missedLookIn } from './charge-look-ins';
@@ -55,7 +61,39 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
       text: chargeDoneText(file, now),
     });
   if (checkDue)
-    wanted.push({ kind: 'check-due', level: 'amber', since: charge.checkDueAt ?? now, text: checkDueText(file) });
+    wanted.push({
+      // By its readings before its time: nobody expects it yet.
+      kind: isSettledEarly(file) ? 'rested' : 'check-due',
+      level: 'amber',
+      since: charge.checkDueAt ?? now,
+      text: checkDueText(file),
+    });
+  if (charge.stage === 'tapering')
+    wanted.push({
+      kind: 'taper-begun',
+      level: 'tell',
+      since: charge.taperAt ?? now,
+      key: 'taper',
+      text: taperText(file, now),
+    });
+  const startMissed = startMissedSince(file, now);
+  if (startMissed !== null)
+    wanted.push({
+      kind: 'latest-start-missed',
+      level: 'amber',
+      since: startMissed,
+      key: String(startMissed),
+      text: startMissedText(file, startMissed, now),
+    });
+  const silence = silenceOf(file);
+  if (silence !== null && silence.dueAt <= now)
+    wanted.push({
+      kind: 'no-reading',
+      level: 'amber',
+      since: silence.dueAt,
+      key: String(silence.lastAt),
+      text: noReadingText(file, silence, now),
+    });
   const swap = swapWait(file);
   if (swap !== null)
     wanted.push({
@@ -77,19 +115,55 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
   // What was missed is told as that; of those due since it the last is still asked for.
   if (lookIn !== null && lookIn !== missed)
     wanted.push({ kind: 'look-in-due', level: 'tell', since: lookIn.dueAt, key: lookIn.id, text: lookInText(file) });
-  const odd = isUnderWay(charge.stage) ? (charge.reckoning?.reckoning.odd ?? null) : null;
-  if (odd !== null)
-    // One kind is told once a charge: what comes and goes with every reading would ring with every reading.
-    wanted.push({
-      kind: 'odd-reading',
-      level: 'alarm',
-      since: readingInstantOf(charge, odd.sinceS),
-      key: odd.kind,
-      text: oddText(file, odd),
-    });
+  if (isUnderWay(charge.stage)) wanted.push(...readingAlerts(file));
   const late = overdueSince(file, now);
   if (late !== null) wanted.push({ kind: 'overdue', level: 'alarm', since: late, text: overdueText(file, now) });
   return wanted;
+}
+
+/** What the readings of a charge call for: over a limit of its type, or what nothing explains. */
+function readingAlerts(file: ChargeFile): Wanted[] {
+  const { charge } = file;
+  const wanted: Wanted[] = [];
+  const warm = overTemperature(file);
+  // Each time over a limit is told anew.
+  if (warm !== null)
+    wanted.push({
+      kind: 'too-warm',
+      level: 'alarm',
+      since: warm.since,
+      key: String(warm.since),
+      text: overTemperatureText(file, warm),
+    });
+  const volts = overVoltage(file);
+  if (volts !== null)
+    wanted.push({
+      kind: 'over-voltage',
+      level: 'alarm',
+      since: volts.since,
+      key: String(volts.since),
+      text: overVoltageText(file, volts),
+    });
+  const odd = charge.reckoning?.reckoning.odd ?? null;
+  if (odd === null || (odd.kind === 'too-warm' && warm !== null)) return wanted;
+  // One kind is told once a charge: what comes and goes with every reading would ring with every reading.
+  wanted.push({
+    kind: odd.kind === 'too-warm' || odd.kind === 'no-current' ? odd.kind : 'odd-reading',
+    level: 'alarm',
+    since: readingInstantOf(charge, odd.sinceS),
+    key: odd.kind,
+    text: oddText(file, odd),
+  });
+  return wanted;
+}
+
+/** What is raised only for who has asked for it is left out unless the person of the charge has. */
+async function askedFor(manager: EntityManager, file: ChargeFile, wanted: Wanted[]): Promise<Wanted[]> {
+  const { personId, workshopId } = file.charge;
+  if (!wanted.some(({ kind }) => askedForOnly.includes(kind))) return wanted;
+  const ids = personId === null ? [] : [personId];
+  const wishes = [...(await alertSettingsOf(manager, workshopId, ids)).values()][0]?.wishes ?? {};
+  return wanted.filter((want) => !askedForOnly.includes(want.kind) || waysOf(wishes, want).length > 0);
 }
 
 export interface AlertChanges {
@@ -112,15 +186,14 @@ export async function syncAlerts(
   const { charge } = file;
   const all = await alertsOfCharge(manager, charge.workshopId, charge.id);
   const changes: AlertChanges = { raised: [], changed: [] };
-  const wanted = await withoutUnattended(manager, file, wantedAlerts(file, now), now);
+  const wanted = await askedFor(manager, file, await withoutUnattended(manager, file, wantedAlerts(file, now), now));
   for (const alert of all.filter((one) => one.clearedAt === null)) {
     const match = wanted.find((one) => one.kind === alert.kind && isCauseOf(one, alert));
     if (match) {
       if (isToldAgain(match, alert, now, dueWas)) changes.raised.push(alert);
       continue;
     }
-    await updateAlert(manager, charge.workshopId, alert.id, { clearedAt: now });
-    alert.clearedAt = now;
+    await clearAlert(manager, alert, now);
     changes.changed.push(alert.id);
   }
   for (const want of wanted) {
@@ -129,7 +202,7 @@ export async function syncAlerts(
     if (all.some((one) => one.cause === cause)) continue;
     const personId = await personFor(manager, file, want, now);
     const alert = newAlert(file, want, cause, personId, now, dueWas);
-    await insertAlert(manager, alert);
+    await raiseAlert(manager, alert, file.workshop, now);
     all.push(alert);
     changes.raised.push(alert);
   }
@@ -146,7 +219,7 @@ function causeOf(chargeId: string, want: Wanted, all: readonly Alert[]): string 
 
 /** A check or a swap that nobody has taken is told again after 5 and after 15 min, each time once. */
 function isToldAgain(want: Wanted, alert: Alert, now: number, dueWas: number | null): boolean {
-  if (alert.takenAt !== null || dueWas === null || (want.kind !== 'check-due' && want.kind !== 'step-swap'))
+  if (alert.takenAt !== null || dueWas === null || !['check-due', 'rested', 'step-swap'].includes(want.kind))
     return false;
   return TOLD_AGAIN_MS.some((wait) => want.since + wait >= dueWas && want.since + wait <= now);
 }
@@ -186,6 +259,7 @@ function newAlert(
     kind: want.kind,
     level: want.level,
     chargeId: charge.id,
+    wallId: null,
     personId,
     title: want.text.title,
     seen: lateByS >= LATE_S ? `${want.text.seen} Told ${durationText(lateByS)} late.` : want.text.seen,
@@ -195,6 +269,9 @@ function newAlert(
     takenById: null,
     takenAt: null,
     passedAt: null,
+    turn: 0,
+    forRole: null,
+    passDueAt: null,
     clearedAt: null,
   };
 }

@@ -1,4 +1,5 @@
 /** When something happens next to a charge, and since when it is late. */
+import { latestStartAt, silenceOf } from './charge-causes';
 import type { ChargeFile } from './charge-file';
 import { chargeNow, instantOf } from './charge-clock';
 import { dueLookIn, nextLookIn, nextMissedAt } from './charge-look-ins';
@@ -49,8 +50,10 @@ export function nextDueAt(file: ChargeFile, now: number): number | null {
   const at = chargeNow(charge, now);
   const instants: (number | null)[] = [];
   const inTime = overdueSince(file, now) === null;
-  if (charge.stage === 'queued') {
-    instants.push(promisedAt(file));
+  if (charge.stage === 'planned') {
+    instants.push(latestStartAt(file));
+  } else if (charge.stage === 'queued') {
+    instants.push(promisedAt(file), latestStartAt(file));
   } else if (isUnderWay(charge.stage)) {
     if (inTime) instants.push(promisedAt(file));
     if (charge.stage !== 'held') instants.push(...runInstants(file, at));
@@ -79,7 +82,7 @@ function runInstants(file: ChargeFile, at: number): (number | null)[] {
       for (const end of [instantOf(charge, reckoning.stepEndS), instantOf(charge, reckoning.currentEndS)])
         instants.push(end > at ? end : at + SOON_MS);
     }
-    instants.push(at + REFRESH_MS);
+    instants.push(at + REFRESH_MS, silenceOf(file)?.dueAt ?? null);
   }
   if (charge.stage === 'resting') {
     const due = charge.checkDueAt ?? at;

@@ -203,7 +203,7 @@ async function syncLookIns(manager: EntityManager, file: ChargeFile, now: number
 }
 
 /** Tells the workshop's screens what was committed, and the sleeper that it may have to wake earlier. */
-export function announce(deps: Pick<Deps, 'hub' | 'sleeper'>, done: Announcement, now: number): void {
+export function announce(deps: Pick<Deps, 'hub' | 'sleeper' | 'outbox'>, done: Announcement, now: number): void {
   const at = toInstant(now);
   const { workshopId, charge, alerts } = done;
   deps.hub.toWorkshop(workshopId, 'board:changed', { rev: done.boardRev, at, chargeId: charge.id });
@@ -221,4 +221,5 @@ export function announce(deps: Pick<Deps, 'hub' | 'sleeper'>, done: Announcement
   }
   for (const id of alerts.changed) deps.hub.toWorkshop(workshopId, 'alert:changed', { id, at });
   deps.sleeper.poke();
+  deps.outbox.poke();
 }

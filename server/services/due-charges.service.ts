@@ -5,7 +5,7 @@ import { loadFiles } from './charge-file';
 import { announce, settle, type Announcement } from './charge-write';
 import { inTransaction } from './unit-of-work';
 
-type Waker = Pick<Deps, 'dataSource' | 'hub' | 'log' | 'sleeper'>;
+type Waker = Pick<Deps, 'dataSource' | 'hub' | 'log' | 'sleeper' | 'outbox'>;
 
 export interface DueWork {
   done: number;

@@ -4,10 +4,11 @@ import type { CheckVerdict } from '@/calc/plan-types';
 import type { ChargeDto, TypedRestCheck } from '@/shared/contract/charge';
 import { restCheckSchemaFor } from '@/shared/contract/rest-check';
 import { can } from '@/shared/contract/roles';
+import { giveAlert } from '../alerts/turns';
 import type { Deps, Member } from '../deps';
 import { forbidden, invalid, notFound } from '../errors/domain-error';
 import { fieldsOf } from '../errors/zod-fields';
-import { alertsOfCharge, updateAlert } from '../repositories/alerts.repository';
+import { alertsOfCharge } from '../repositories/alerts.repository';
 import { insertRestCheck } from '../repositories/charge-rows.repository';
 import { updateSpare } from '../repositories/charge-stock.repository';
 import { insertSpareReading } from '../repositories/spares.repository';
@@ -205,12 +206,12 @@ export function handOver(
 
 /** Open alerts go along; whoever gets them from somebody else hears them from now. */
 async function passAlerts({ manager, file, member, now, passed }: ChargeWrite): Promise<void> {
-  const { charge } = file;
-  const passedAt = charge.personId === member.personId ? null : now;
+  const { charge, workshop } = file;
+  const heardFrom = charge.personId === member.personId ? null : now;
   for (const alert of await alertsOfCharge(manager, charge.workshopId, charge.id)) {
     if (alert.clearedAt !== null || alert.takenAt !== null || alert.personId === charge.personId) continue;
-    const patch = { personId: charge.personId, passedAt };
-    await updateAlert(manager, charge.workshopId, alert.id, patch);
-    if (passedAt !== null) passed.push({ ...alert, ...patch });
+    const to = { personId: charge.personId, byId: member.personId, heardFrom };
+    const patch = await giveAlert(manager, alert, to, workshop, now);
+    if (heardFrom !== null) passed.push({ ...alert, ...patch });
   }
 }

@@ -19,6 +19,7 @@ import { reservedHolds } from './charge-holds';
 import { isUnderWay, isWaitingToStart } from './charge-stages';
 import { clockText, durationText, titleOf } from './charge-words';
 import { announce, settle, type Announcement } from './charge-write';
+import { latestStartAt } from './charge-causes';
 import { newId } from './ids';
 import { planFor, type PlanInputs } from './plan-inputs';
 import { giveToRepair, repairOfPlan } from './repair-charges';
@@ -149,7 +150,7 @@ function chargeRow(
 ): Charge {
   const { frozen, spare, type, clipOnAt, readyBy } = planned;
   const at = (seconds: number): number => clipOnAt + Math.round(seconds * 1000);
-  return {
+  const row: Charge = {
     id: newId(),
     workshopId: member.workshopId,
     number,
@@ -199,6 +200,7 @@ function chargeRow(
     rev: 1,
     createdAt: now,
   };
+  return { ...row, nextDueAt: latestStartAt({ charge: row }) };
 }
 
 async function closeForTopUp(

@@ -5,6 +5,7 @@ import type { Deps, Member } from '../deps';
 import { databaseFile } from '../data-files';
 import { DomainError } from '../errors/domain-error';
 import { countDueBefore } from '../repositories/charges.repository';
+import { countEntries } from '../repositories/outbox.repository';
 import { toInstant } from './instants';
 import { version } from './version';
 
@@ -50,6 +51,7 @@ export async function status(deps: Deps, member: Member, now: number): Promise<S
     },
     sockets: deps.hub.connected(member.workshopId),
     overdueLooks: await countDueBefore(deps.dataSource.manager, member.workshopId, now - OVERDUE_MS),
+    outbox: await countEntries(deps.dataSource.manager, member.workshopId),
   };
 }
 

@@ -18,4 +18,7 @@ export const defaultSettings = (name: string, zone: string): Required<WorkshopSe
   unattendedCharges: false,
   lookInVisitMinutes: 5,
   fitMinutes: 60,
+  passOnTellMinutes: 0,
+  passOnAmberMinutes: 10,
+  passOnAlarmMinutes: 5,
 });

@@ -23,6 +23,9 @@ const workshopDto = (workshop: Workshop): WorkshopDto => ({
   unattendedCharges: workshop.unattendedCharges === true,
   lookInVisitMinutes: workshop.lookInVisitMinutes ?? defaults.lookInVisitMinutes,
   fitMinutes: workshop.fitMinutes ?? defaults.fitMinutes,
+  passOnTellMinutes: workshop.passOnTellMinutes ?? defaults.passOnTellMinutes,
+  passOnAmberMinutes: workshop.passOnAmberMinutes ?? defaults.passOnAmberMinutes,
+  passOnAlarmMinutes: workshop.passOnAlarmMinutes ?? defaults.passOnAlarmMinutes,
   rev: workshop.rev,
 });
 

@@ -1,7 +1,8 @@
 import { useQuery } from '@tanstack/react-query';
 import { useEffect, useRef } from 'react';
-import type { AlertDto } from '@/shared/contract/alert';
-import { concerns, isOpen, mostUrgent, ringOf, ringsSince } from './alarm-rings';
+import { alertPath, type AlertDto } from '@/shared/contract/alert';
+import { concerns, isOpen, mostUrgent, ringOf, ringsSince, type Hearer } from './alarm-rings';
+import { alertSettingsQuery, isHeardHere, useAlertSettings } from './alert-settings';
 import { alertsQuery, useAlerts } from './alerts';
 import { boardQuery } from './board';
 import { serverNow } from './clock';
@@ -9,7 +10,7 @@ import { toldOf } from './heard-alerts';
 import { onAlert } from './live';
 import { showNotice } from './notify';
 import { queryClient } from './query-client';
-import { useSession } from './session';
+import { sessionQuery, useSession } from './session';
 import { canRing, keepSound, playSound } from './sound';
 
 /** What is older than this when the device meets it was missed here: it is told by a notice too. */
@@ -22,20 +23,24 @@ const askAgainMs = 3000;
  * was raised while this device was away rings once, with a notice, as soon as it is known here and sound may play.
  */
 export function useAlarmBell(): void {
-  const personId = useSession().data?.person.id ?? null;
+  const person = useSession().data?.person ?? null;
+  const personId = person?.id ?? null;
+  const role = person?.role ?? null;
   // Asked for here, read from the cache by the bell.
   useAlerts();
+  useAlertSettings(personId !== null);
 
   useEffect(keepSound, []);
 
   useEffect(() => {
-    if (!personId) return;
+    if (!personId || !role) return;
+    const hearer: Hearer = { id: personId, role };
     let shownAgainAt = -Infinity;
     const look = () => {
       const { data, dataUpdatedAt = 0 } = queryClient.getQueryState(alertsQuery().queryKey) ?? {};
       if (!data) return;
       if (dataUpdatedAt < shownAgainAt && Date.now() < shownAgainAt + askAgainMs) return;
-      ringFor(data, personId);
+      ringFor(data, hearer);
     };
     const seen = () => {
       if (document.visibilityState !== 'visible') return;
@@ -45,17 +50,19 @@ export function useAlarmBell(): void {
     const timer = setInterval(look, 1000);
     document.addEventListener('visibilitychange', seen);
     const stop = onAlert((alert) => {
-      queryClient.setQueryData(alertsQuery().queryKey, (known) => known && withAlert(known, alert));
-      if (document.visibilityState === 'visible' || !concerns(alert, personId)) return;
+      const known = queryClient.getQueryData(alertsQuery().queryKey) ?? [];
+      const again = known.some(({ id, turn }) => id === alert.id && turn === alert.turn);
+      queryClient.setQueryData(alertsQuery().queryKey, (all) => all && withAlert(all, alert));
+      if (document.visibilityState === 'visible' || !concerns(alert, hearer) || !isWanted(alert)) return;
       // Told again or passed on it is news, also where the first telling was met.
-      void tellByNotice(alert);
+      void tellByNotice(alert, again);
     });
     return () => {
       clearInterval(timer);
       document.removeEventListener('visibilitychange', seen);
       stop();
     };
-  }, [personId]);
+  }, [personId, role]);
 
   useRestTone(personId);
 }
@@ -64,10 +71,17 @@ export function useAlarmBell(): void {
 const withAlert = (known: AlertDto[], alert: AlertDto): AlertDto[] =>
   known.some(({ id }) => id === alert.id) ? known.map((one) => (one.id === alert.id ? alert : one)) : [alert, ...known];
 
-function ringFor(alerts: AlertDto[], personId: string): void {
+/** Its person wants it by this page, now. What was not read yet is wanted. */
+function isWanted(alert: AlertDto): boolean {
+  const settings = queryClient.getQueryData(alertSettingsQuery().queryKey);
+  const zone = queryClient.getQueryData(sessionQuery().queryKey)?.workshop.zone;
+  return !settings || !zone || isHeardHere(settings, alert, zone, serverNow());
+}
+
+function ringFor(alerts: AlertDto[], hearer: Hearer): void {
   const now = serverNow();
   const told = toldOf(alerts);
-  const due = alerts.filter((alert) => isOpen(alert) && concerns(alert, personId));
+  const due = alerts.filter((alert) => isOpen(alert) && concerns(alert, hearer) && isWanted(alert));
   for (const alert of due.filter((one) => !told.of(one).met)) {
     if (document.visibilityState !== 'visible' || now - ringsSince(alert) > missedAfterMs) void tellByNotice(alert);
     else told.of(alert).met = true;
@@ -76,7 +90,7 @@ function ringFor(alerts: AlertDto[], personId: string): void {
   if (canRing()) {
     const sounds = due.flatMap((alert) => {
       const entry = told.of(alert);
-      const ring = ringOf(alert, personId, entry.heardTo, now);
+      const ring = ringOf(alert, hearer, entry.heardTo, now);
       if (ring) entry.heardTo = now;
       return ring ?? [];
     });
@@ -88,16 +102,20 @@ function ringFor(alerts: AlertDto[], personId: string): void {
 
 const beingTold = new Set<string>();
 
-/** Shows it, and counts it as met only where the device did: one that may not show notices yet has missed it still. */
-async function tellByNotice(alert: AlertDto): Promise<void> {
+/**
+ * Shows it, and counts it as met only where the device did: one that may not show notices yet has missed it still.
+ * @param again it is told once more: else a push that has shown it already is enough
+ */
+async function tellByNotice(alert: AlertDto, again = false): Promise<void> {
   if (beingTold.has(alert.id)) return;
   beingTold.add(alert.id);
   try {
     const shown = await showNotice({
       title: alert.title,
       body: [alert.seen, alert.checkFirst].filter(Boolean).join(' '),
-      url: `/charges/${alert.chargeId}`,
+      url: alertPath(alert),
       tag: alert.id,
+      ...(again ? {} : { id: alert.id, turn: alert.turn }),
     });
     if (!shown) return;
     const told = toldOf(queryClient.getQueryData(alertsQuery().queryKey) ?? [alert]);

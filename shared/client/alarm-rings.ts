@@ -1,28 +1,50 @@
 /** When an alert rings, as a pure rule: raised once, again where the look says so, until somebody has it. */
 import type { AlertDto, AlertKind } from '@/shared/contract/alert';
+import type { Role } from '@/shared/contract/roles';
 import type { SoundName } from './sound-contours';
 
 const minute = 60_000;
 /** After the first ring of what waits for a hand; what only tells rings once. */
 const again = [0, 5 * minute, 15 * minute];
 const rules: Record<AlertKind, { sound: SoundName; after: readonly number[]; everyMs?: number }> = {
+  'taper-begun': { sound: 'look-in', after: [0] },
   'charge-done': { sound: 'ready', after: again },
+  rested: { sound: 'check-due', after: again },
   'check-due': { sound: 'check-due', after: again },
   'step-swap': { sound: 'check-due', after: again },
   overdue: { sound: 'overdue', after: [0], everyMs: minute },
+  'latest-start-missed': { sound: 'check-due', after: [0] },
   'look-in-due': { sound: 'look-in', after: [0] },
   'look-in-missed': { sound: 'look-in', after: again },
+  'no-reading': { sound: 'look-in', after: again },
+  'wall-unseen': { sound: 'look-in', after: [0] },
+  // Over a limit of its type nothing waits.
+  'too-warm': { sound: 'overdue', after: [0], everyMs: minute },
+  'over-voltage': { sound: 'overdue', after: [0], everyMs: minute },
   // It asks for a look, not for a hand by the minute: heard once.
   'odd-reading': { sound: 'overdue', after: [0] },
+  'no-current': { sound: 'overdue', after: [0] },
 };
 const urgency: readonly SoundName[] = ['overdue', 'check-due', 'ready', 'look-in'];
 
 /** Neither taken nor over. */
 export const isOpen = (alert: AlertDto): boolean => alert.takenBy === null && alert.clearedAt === null;
 
-/** Whom an alert is for: its person, everybody where it has none, everybody when it is an alarm. */
-export const concerns = (alert: AlertDto, personId: string): boolean =>
-  alert.for === null || alert.for.id === personId || alert.level === 'alarm';
+/** Who listens on this device. */
+export interface Hearer {
+  id: string;
+  role: Role;
+}
+
+/**
+ * Whom an alert is for: its person, everybody when it is an alarm; gone on because nobody took it, the foremen too, then the
+ * managers. One that has no person and has not gone on is everybody's.
+ */
+export function concerns(alert: AlertDto, { id, role }: Hearer): boolean {
+  if (alert.level === 'alarm' || alert.for?.id === id) return true;
+  if (alert.forRole === null) return alert.for === null;
+  return role === 'foreman' || (role === 'manager' && alert.forRole === 'manager');
+}
 
 /** Since when it rings, epoch ms: for whom it was passed to, from then. */
 export const ringsSince = (alert: AlertDto): number => Date.parse(alert.passedAt ?? alert.raisedAt);
@@ -44,8 +66,8 @@ export function ringsBetween(alert: AlertDto, from: number, to: number): boolean
  * What an alert sounds like for a person at `to`; null: it does not ring.
  * @param from till when it was heard on this device, epoch ms; null: never, so it rings however old it is
  */
-export const ringOf = (alert: AlertDto, personId: string, from: number | null, to: number): SoundName | null => {
-  if (!isOpen(alert) || !concerns(alert, personId)) return null;
+export const ringOf = (alert: AlertDto, hearer: Hearer, from: number | null, to: number): SoundName | null => {
+  if (!isOpen(alert) || !concerns(alert, hearer)) return null;
   return from === null || ringsBetween(alert, from, to) ? rules[alert.kind].sound : null;
 };
 

@@ -23,6 +23,7 @@ export const liveRoots: readonly Root[] = [
   roots.repair,
   roots.packTypes,
   roots.alerts,
+  roots.alertSettings,
   roots.spares,
   roots.spare,
   roots.chargers,

@@ -5,6 +5,9 @@ export interface Notice {
   /** Address within this site that a tap opens. */
   url: string;
   tag: string;
+  /** Of an alert: one that is shown already with the same turn is not told a second time. */
+  id?: string;
+  turn?: number;
 }
 
 /** 'default': not asked yet. 'unavailable': this device or address has none. */

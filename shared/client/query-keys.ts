@@ -22,6 +22,8 @@ export const roots = {
   packTypes: 'pack-types',
   board: 'board',
   alerts: 'alerts',
+  alertSettings: 'alert-settings',
+  pushKey: 'push-key',
   walls: 'walls',
   wallRequest: 'wall-request',
   wallMe: 'wall-me',

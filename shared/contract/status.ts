@@ -32,4 +32,6 @@ export interface StatusDto {
   sockets: number;
   /** Charges of this workshop whose due instant has passed without the server having looked at them. */
   overdueLooks: number;
+  /** Alerts of this workshop on their way out by push or e-mail, and those that were given up. */
+  outbox: { waiting: number; dead: number };
 }

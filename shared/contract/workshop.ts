@@ -13,6 +13,8 @@ export const dayHours = z.nullable(
     .check(z.refine((day) => day.from < day.to, { message: 'Closing must come after opening.', path: ['to'] })),
 );
 
+const passOn = (name: string) => quantity({ name, unit: 'min', min: 0, max: 240, whole: true });
+
 export const workshopSettingsSchema = z.object({
   name: text('The workshop’s name', 80),
   zone,
@@ -30,6 +32,12 @@ export const workshopSettingsSchema = z.object({
   lookInVisitMinutes: z.optional(quantity({ name: 'Minutes of a look-in', unit: 'min', min: 1, max: 60, whole: true })),
   /** What fitting a ready module takes, in people's lines of the bench plan. Left out: 60. */
   fitMinutes: z.optional(quantity({ name: 'Minutes to fit', unit: 'min', min: 5, max: 600, whole: true })),
+  /** Minutes after which an alert that nobody has taken goes on to the foremen, then the managers; 0: never. Left out: 0. */
+  passOnTellMinutes: z.optional(passOn('Minutes of what only tells')),
+  /** Left out: 10. */
+  passOnAmberMinutes: z.optional(passOn('Minutes of what needs a hand')),
+  /** Left out: 5. */
+  passOnAlarmMinutes: z.optional(passOn('Minutes of an alarm')),
 });
 /** What is left out stays as it is. */
 export const changeWorkshopSchema = z.partial(workshopSettingsSchema);

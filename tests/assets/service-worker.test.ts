@@ -18,7 +18,10 @@ interface FakeWindow {
 /** The worker's own script in a world of fakes: what it shows, opens and focuses is written down. */
 function startWorker(windows: FakeWindow[]) {
   const listeners = new Map<string, (event: unknown) => void>();
-  const shown: { title: string; options: { body: string; tag?: string; data: { url: string } } }[] = [];
+  const shown: {
+    title: string;
+    options: { body: string; tag?: string; renotify: boolean; data: { url: string; turn?: number } };
+  }[] = [];
   const opened: string[] = [];
   let tookOver = false;
   const clients = windows.map((window) => ({
@@ -50,6 +53,10 @@ function startWorker(windows: FakeWindow[]) {
         shown.push({ title, options });
         return Promise.resolve();
       },
+      getNotifications: ({ tag }: { tag: string }) =>
+        Promise.resolve(
+          shown.filter(({ options }) => options.tag === tag).map(({ options }) => ({ data: options.data })),
+        ),
     },
     clients: {
       claim: () => Promise.resolve(),
@@ -108,6 +115,29 @@ describe('a notice', () => {
       ['Done', 'S-0391'],
       ['Bidewell', 'not json'],
     ]);
+  });
+
+  test('pushed twice for one turn of an alert is heard once; its next turn is heard again', async () => {
+    const push = (turn: number) =>
+      worker.fire('push', { data: { json: () => ({ title: 'Check due', tag: 'a7', id: 'a7', turn }) } });
+    await push(0);
+    await push(0);
+    await push(1);
+    await Promise.all([push(1), push(1)]);
+    expect(worker.shown.map(({ options }) => [options.tag, options.renotify])).toEqual([
+      ['a7', true],
+      ['a7', false],
+      ['a7', true],
+      ['a7', false],
+      ['a7', false],
+    ]);
+  });
+
+  test('told once more by the open page is heard again', async () => {
+    const notice = { title: 'Check due', tag: 'a7', id: 'a7', turn: 0 };
+    await worker.fire('message', { data: { type: 'notify', notice } });
+    await worker.fire('message', { data: { type: 'notify', notice: { title: 'Check due', tag: 'a7' } } });
+    expect(worker.shown.map(({ options }) => options.renotify)).toEqual([true, true]);
   });
 
   test.each(['https://elsewhere.example.org/x', '//elsewhere.example.org', 'javascript:alert(1)', 'http://['])(

@@ -88,6 +88,7 @@ const screens = [
   '/estimate',
   '/more',
   '/me',
+  '/me/alerts',
 ] as const;
 
 /** What a foreman or a technician sees otherwise than a manager, who is shown all: what the role opens, locks or hides. */

@@ -3,6 +3,8 @@ import { Alert } from '@/server/entities/alert';
 import { Charge } from '@/server/entities/charge';
 import { RestCheck } from '@/server/entities/rest-check';
 import { SpareCapacity } from '@/server/entities/spare-capacity';
+import { OutboxEntry } from '@/server/entities/outbox-entry';
+import { PushDevice } from '@/server/entities/push-device';
 import { makeSleeper } from '@/server/live/sleeper-loop';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { ChargerDto, MeterDto, ModuleTypeDto, ResistorDto } from '@/shared/contract/equipment';
@@ -40,6 +42,9 @@ export interface Furnished {
   spareId: string;
   optionId: string;
   alertId: string;
+  /** A push of that alert that was given up, and a device of its person. */
+  undeliveredId: string;
+  deviceId: string;
   /** A spare reserved for a repair. */
   reservedSpareId: string;
   repairs: Repaired;
@@ -72,6 +77,8 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.provenId,
   furnished.spareId,
   furnished.alertId,
+  furnished.undeliveredId,
+  furnished.deviceId,
   furnished.capacityId,
   furnished.reservedSpareId,
   ...Object.values(furnished.repairs).filter((id) => typeof id === 'string'),
@@ -109,7 +116,8 @@ async function startCharge(server: TestServer, technician: TestAgent, spareId: s
   return bodyOf<ChargeDto>(start);
 }
 
-async function addWall(server: TestServer, foreman: TestAgent, name: string) {
+/** Pairs a wall. */
+export async function addWall(server: TestServer, foreman: TestAgent, name: string) {
   const asked = await bodyOf<WallCodeDto>(server.anyone.post('/api/wall/codes'), 201);
   const { userCode, deviceCode } = asked;
   const form = { userCode, name: `Wall of ${name}`, diagonalInches: '55', distanceMetres: '7' };
@@ -176,6 +184,25 @@ async function addProven(server: TestServer, restedId: string, id: string, perso
   return id;
 }
 
+/** A phone of the technician, and a push of an alert to it that was given up. */
+async function addUndelivered(server: TestServer, alert: Alert, person: { id: string; sessionId: string }) {
+  const { manager } = server.deps.dataSource;
+  const deviceId = `${alert.id}-phone`;
+  const undeliveredId = `${alert.id}-push`;
+  const now = server.clock.now();
+  const own = { workshopId: alert.workshopId, personId: person.id, createdAt: now };
+  await manager.insert(PushDevice, {
+    ...{ ...own, id: deviceId, sessionId: person.sessionId, kind: 'phone', name: 'Phone' },
+    ...{ address: `ExponentPushToken[${alert.id}]`, p256dh: null, auth: null },
+  });
+  await manager.insert(OutboxEntry, {
+    ...{ ...own, id: undeliveredId, alertId: alert.id, turn: 0, way: 'phone-push', state: 'dead', dueAt: now },
+    ...{ leasedUntil: null, tries: 12, reached: [], tickets: [], receiptDueAt: null, heldAt: null },
+    ...{ reason: 'The service did not answer.', endedAt: now },
+  });
+  return { undeliveredId, deviceId };
+}
+
 /** A second charge that runs, an alert, an invitation and a wall. */
 async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin>>): Promise<Furnished> {
   const { name, workshop, technician, manager, ...ids } = begun;
@@ -195,6 +222,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     kind: 'look-in-due',
     level: 'amber',
     chargeId,
+    wallId: null,
     personId: workshop.people.technician.id,
     title: `${name}’s look-in`,
     seen: 'Nothing yet.',
@@ -204,6 +232,9 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     takenById: null,
     takenAt: null,
     passedAt: null,
+    turn: 0,
+    forRole: null,
+    passDueAt: null,
     clearedAt: null,
   };
   await server.deps.dataSource.manager.insert(Alert, alert);
@@ -252,6 +283,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     readingId: charge.readings[0]?.id ?? '',
     optionId: plan.options[0]?.id ?? '',
     alertId: alert.id,
+    ...(await addUndelivered(server, alert, workshop.people.technician)),
     capacityId: capacity.id,
     repairs,
     bench,

@@ -148,7 +148,8 @@ const newDataDir = (): string => path.join(os.tmpdir(), `bidewell-test-${process
 /** One for all servers of a test file: it watches the process, of which there is one. */
 const metrics = makeMetrics('test');
 
-const testConfig: Omit<Config, 'dataDir'> = {
+/** Settings of a server that reaches nobody outside. */
+export const testConfig: Omit<Config, 'dataDir'> = {
   port: 0,
   host: '127.0.0.1',
   webDir: '/nonexistent',
@@ -160,6 +161,9 @@ const testConfig: Omit<Config, 'dataDir'> = {
   metroPort: null,
   backupHours: 0,
   metricsToken: null,
+  mail: null,
+  expoToken: null,
+  localPush: false,
 };
 
 async function addWorkshop(deps: Deps, name: 'own' | 'other', now: number): Promise<TestWorkshop> {
@@ -242,6 +246,7 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     log: makeLog('silent'),
     hub,
     sleeper: { poke: () => {} },
+    outbox: { poke: () => {}, pushKey: 'BKey', eMail: false },
     lifecycle: { ready: true, startedAt: clock.now() },
     passwords,
     // The same reckoning, on this thread: what the thread itself does has tests of its own.

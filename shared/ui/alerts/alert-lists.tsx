@@ -5,7 +5,7 @@ import { Columns } from '../screen/columns';
 import { makeStyles } from '../theme/make-styles';
 import { AlertCard } from './alert-card';
 import { AlertRow } from './alert-row';
-import type { ComponentProps } from 'react';
+import type { ComponentProps, ReactNode } from 'react';
 
 type CardProps = ComponentProps<typeof AlertCard>;
 
@@ -15,12 +15,18 @@ export function AlertLists({
   now,
   cardOf,
   onGo,
+  above,
+  below,
 }: {
   alerts: readonly AlertDto[];
   now: number;
   /** What a card shows and does beside its alert. */
   cardOf: (alert: AlertDto) => Omit<CardProps, 'alert' | 'now' | 'onGo'>;
   onGo: (path: string) => void;
+  /** Before the open ones: what could not be brought to somebody. */
+  above?: ReactNode;
+  /** Under the settled ones. */
+  below?: ReactNode;
 }) {
   const styles = useStyles();
   const open = alerts.filter((alert) => alert.clearedAt === null);
@@ -29,6 +35,7 @@ export function AlertLists({
     <Columns
       work={
         <View style={styles.stack}>
+          {above}
           {open.length === 0 ? (
             <Txt kind="titleWide" style={styles.none}>
               No open alerts.
@@ -51,6 +58,7 @@ export function AlertLists({
           ) : (
             settled.map((alert) => <AlertRow key={alert.id} alert={alert} now={now} onGo={onGo} />)
           )}
+          {below}
         </View>
       }
     />

@@ -1,5 +1,5 @@
 import { View } from 'react-native';
-import type { AlertDto } from '@/shared/contract/alert';
+import { alertPath, type AlertDto } from '@/shared/contract/alert';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { PressableLink } from '../primitives/pressable-link';
@@ -19,7 +19,7 @@ export function AlertRow({ alert, now, onGo }: { alert: AlertDto; now: number; o
   const at = (instant: string) => moment(Date.parse(instant), zone, now, marks);
   const { mark, word } = lookOf(alert);
   const look = stages[mark];
-  const live = `/charges/${alert.chargeId}`;
+  const live = alertPath(alert);
   return (
     <PressableLink
       href={live}

@@ -11,6 +11,9 @@ export interface LimitTexts {
   lagLimitMillivolts: string;
   lookInVisitMinutes: string;
   fitMinutes: string;
+  passOnTellMinutes: string;
+  passOnAmberMinutes: string;
+  passOnAlarmMinutes: string;
   technicianDecides: boolean;
   baseRev: number;
 }
@@ -69,6 +72,27 @@ export const limitFields: readonly LimitField[] = [
     whole: true,
     meaning: 'kept free for it in the bench plan, once the module is ready',
     usual: 60,
+  },
+  {
+    key: 'passOnAlarmMinutes',
+    name: 'An alarm goes on after',
+    unit: 'min',
+    whole: true,
+    meaning: 'that nobody has taken: to the foremen, then the managers; 0: never',
+  },
+  {
+    key: 'passOnAmberMinutes',
+    name: 'What needs a hand goes on after',
+    unit: 'min',
+    whole: true,
+    meaning: 'that nobody has taken; 0: never',
+  },
+  {
+    key: 'passOnTellMinutes',
+    name: 'What only tells goes on after',
+    unit: 'min',
+    whole: true,
+    meaning: 'that nobody has taken; 0: never',
   },
 ];
 export const technicianDecidesName = 'A technician may decide between two sources';

@@ -13,6 +13,8 @@ const alert = (more: Partial<AlertDto> = {}): AlertDto => ({
   chargeId: 'c1',
   title: 'R-2406 at B2',
   for: null,
+  forRole: null,
+  turn: 0,
   seen: 'It was to be ready by 13:20. Now 14:55.',
   checkFirst: 'Warmth at group 4, then its clips.',
   raisedAt: iso('13:20'),

@@ -18,6 +18,9 @@ const workshop = {
   lookInMinutes: 60,
   inrushLimitC: 1,
   lagLimitMillivolts: 20,
+  passOnTellMinutes: 0,
+  passOnAmberMinutes: 10,
+  passOnAlarmMinutes: 5,
   rev: 4,
 };
 

@@ -40,6 +40,7 @@ const status: StatusDto = {
   },
   sockets: 4,
   overdueLooks: 0,
+  outbox: { waiting: 0, dead: 0 },
 };
 
 let server: ReturnType<typeof fakeServer>;

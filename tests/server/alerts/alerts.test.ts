@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
-import type { AlertDto } from '@/shared/contract/alert';
+import type { AlertDto, AlertKind } from '@/shared/contract/alert';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { alertsOf, at, did, hour, key, makeBench, minute, running, seen, type Bench } from '../charges/bench';
 
@@ -36,7 +36,12 @@ describe('one alert a cause', () => {
       for: { id: 'own-technician' },
       lateByS: 0,
     });
-    const told = () => (bench.server.hub.of('alert:raised') as AlertDto[]).filter((one) => one.id === alert!.id).length;
+    // That it goes on to the foremen when nobody takes it is told to them alone.
+    const told = () =>
+      bench.server.hub.told.filter(
+        ({ event, personId, payload }) =>
+          event === 'alert:raised' && personId === undefined && (payload as AlertDto).id === alert!.id,
+      ).length;
     expect(told()).toBe(1);
     await until(at(charge.checkDueAt) + 6 * minute);
     expect(told()).toBe(2);
@@ -169,10 +174,12 @@ describe('who has it', () => {
     ).toBe(404);
   });
 
-  const toldTo = (personId: string): AlertDto[] =>
+  // The look-ins that nobody made before have gone on to the foreman by themselves.
+  const toldTo = (personId: string, kind: AlertKind = 'check-due'): AlertDto[] =>
     bench.server.hub.told
       .filter((one) => one.event === 'alert:raised' && one.personId === personId)
-      .map((one) => one.payload as AlertDto);
+      .map((one) => one.payload as AlertDto)
+      .filter((one) => one.kind === kind);
 
   test('passed on after 10 min it rings for the other alone, from then', async () => {
     await checkDue();

@@ -16,7 +16,7 @@ async function logged(charge: Pick<ChargeDto, 'id'>, reading: object): Promise<C
   expect(answer.status, JSON.stringify(answer.body)).toBe(200);
   return answer.body as ChargeDto;
 }
-const oddAlerts = async () => (await alertsOf(bench)).filter(({ kind }) => kind === 'odd-reading');
+const oddAlerts = async () => (await alertsOf(bench)).filter(({ kind }) => kind === 'no-current');
 
 test('a current of 0 A where 10 A are set is odd at once, is told once, and is settled by the next reading that fits', async () => {
   const charge = await running(bench, { spareId: await bench.spare('S-0402') });

@@ -49,7 +49,7 @@ async function invariants(bench: Bench, told: string): Promise<void> {
   expect(new Set(openOnes).size, `${told}: one open alert a kind and charge`).toBe(openOnes.length);
   const byId = new Map(board.charges.map((card) => [card.id, card]));
   for (const alert of alerts.filter((one) => one.clearedAt === null)) {
-    const stage = byId.get(alert.chargeId)?.stage;
+    const stage = byId.get(alert.chargeId ?? '')?.stage;
     if (alert.kind === 'check-due') expect(stage, told).toBe('check-due');
     if (alert.kind === 'step-swap') expect(flowing, told).toContain(stage);
     if (alert.kind === 'charge-done') expect(['resting', 'check-due'], told).toContain(stage);

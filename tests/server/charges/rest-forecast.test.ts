@@ -58,7 +58,7 @@ describe('the rest', () => {
     expect(settled.rest!.chance).toBeGreaterThanOrEqual(0.9);
     expect(at(settled.rest!.enoughAt)).toBeLessThan(minimumEnd);
     expect(at(settled.checkDueAt)).toBeLessThan(minimumEnd);
-    const alert = (await alertsOf(bench)).find(({ kind, clearedAt }) => kind === 'check-due' && clearedAt === null);
+    const alert = (await alertsOf(bench)).find(({ kind, clearedAt }) => kind === 'rested' && clearedAt === null);
     expect(alert!.seen).toMatch(/^Rested .* Its readings say that it has settled\.$/);
     expect(bench.server.clock.now()).toBeLessThan(minimumEnd);
     const checked = await did(bench, settled, 'rest-check', {

@@ -33,6 +33,7 @@ const comeAndGo = {
     ...['pack_type', 'repair', 'repair_person', 'pack_reading', 'second_source', 'removed_module', 'repair_wait'],
     ...['repair_event', 'advised_item', 'photo', 'fitted_spare'],
     ...['place', 'skill', 'staffing', 'work', 'work_stint', 'bench_change'],
+    ...['alert_turn', 'outbox_entry', 'push_device', 'alert_setting'],
   ],
   columns: [
     ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],
@@ -41,6 +42,8 @@ const comeAndGo = {
     ...['display_step_amps', 'leads_measured', 'derating_above_celsius', 'derating_percent', 'duty_percent'],
     ...['technician_decides', 'repair_id'],
     ...['unattended_charges', 'look_in_visit_minutes', 'fit_minutes', 'usual_arrival_volts'],
+    ...['pass_on_tell_minutes', 'pass_on_amber_minutes', 'pass_on_alarm_minutes'],
+    ...['wall_id', 'for_role', 'pass_due_at', 'turn'],
   ],
 };
 

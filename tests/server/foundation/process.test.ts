@@ -113,7 +113,7 @@ describe('the process', () => {
     finish();
     expect(await status).toBe(201);
     expect(await exit).toBe(0);
-    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key', 'server.lock']);
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'push.key', 'secret.key', 'server.lock']);
     expect(mode(databaseFile(folder))).toBe('600');
     const database = new Database(databaseFile(folder), { readonly: true });
     expect(database.prepare('SELECT email FROM person').all()).toEqual([{ email: 'alva@example.com' }]);

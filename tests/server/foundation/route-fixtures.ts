@@ -8,6 +8,7 @@ import { twoHalves } from '@/tests/support/pictures';
 import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
+import { alertFixtures } from './route-fixtures-alerts';
 import { benchFixtures } from './route-fixtures-bench';
 
 export interface Fit {
@@ -307,14 +308,9 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/search': technician(() => ({ query: 'q=van' })),
 
   'GET /api/board': technician(),
-  'GET /api/alerts': technician(),
-  'POST /api/alerts/:id/take': technician((f) => ({ params: { id: f.alertId } })),
-  'POST /api/alerts/:id/pass': technician((f) => ({
-    params: { id: f.alertId },
-    body: { personId: f.workshop.people.foreman.id },
-  })),
   'GET /api/waits': foreman(),
   'GET /api/waits.csv': foreman(),
 
   ...benchFixtures,
+  ...alertFixtures,
 };

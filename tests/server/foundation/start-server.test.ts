@@ -16,6 +16,7 @@ import { migrations } from '@/server/migrations/all';
 import { makeLocalCertificate } from '@/server/cli/certificate';
 import { startServer, type RunningServer } from '@/server/start-server';
 import { cookiesOf } from '@/tests/support/cookies';
+import { testConfig } from '@/tests/support/server';
 
 const root = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-start-'));
 afterAll(() => fs.rmSync(root, { recursive: true, force: true }));
@@ -23,18 +24,8 @@ let folders = 0;
 const newFolder = () => path.join(root, String(++folders));
 const log = makeLog('silent');
 const configFor = (dataDir: string, change: Partial<Config> = {}): Config => ({
-  port: 0,
-  host: '127.0.0.1',
+  ...testConfig,
   dataDir,
-  webDir: '/nonexistent',
-  demo: false,
-  tls: null,
-  proxyHops: 0,
-  publicUrl: null,
-  logLevel: 'silent',
-  metroPort: null,
-  backupHours: 0,
-  metricsToken: null,
   ...change,
 });
 
@@ -91,7 +82,7 @@ describe('the first start', () => {
     expect((await request(first.address).post('/api/session').send({ email, password: 'not this' })).status).toBe(401);
     await first.stop();
     running.pop();
-    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'secret.key', 'server.lock']);
+    expect(fs.readdirSync(folder).sort()).toEqual(['bidewell.sqlite', 'push.key', 'secret.key', 'server.lock']);
     const second = await start(folder);
     expect((await request(second.address).get('/api/session').set('Cookie', cookie)).body.person.email).toBe(email);
   });

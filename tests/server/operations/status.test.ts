@@ -29,6 +29,7 @@ test('the manager sees version, start, sizes and copies; a copy made by hand is 
     databaseBytes: fs.statSync(databaseFile(server.deps.config.dataDir)).size,
     backups: { everyHours: 0, count: 0, latest: [], failed: null },
     overdueLooks: 0,
+    outbox: { waiting: 0, dead: 0 },
   });
   const after = (await manager.post('/api/status/backup').expect(200)).body;
   expect(after.backups).toMatchObject({ count: 1, latest: [{ at: new Date(testNow + 90_000).toISOString() }] });

@@ -22,6 +22,7 @@ const sleeper = makeSleeper({
     connected: () => 0,
     end: () => {},
   },
+  outbox: { poke: () => {}, pushKey: '', eMail: false },
 });
 process.stdout.write('up\n');
 while (now() < end) {

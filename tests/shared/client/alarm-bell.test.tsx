@@ -38,6 +38,8 @@ const alert = (more: Partial<AlertDto> = {}): AlertDto => ({
   chargeId: 'c1',
   title: 'R-2406 at B2',
   for: petra,
+  forRole: null,
+  turn: 0,
   seen: 'The current has ended.',
   checkFirst: 'Switch it off.',
   raisedAt: iso(start),
@@ -50,7 +52,10 @@ const alert = (more: Partial<AlertDto> = {}): AlertDto => ({
 });
 const noticeOf = (id: string) => ({
   type: 'notify',
-  notice: { title: 'R-2406 at B2', body: 'The current has ended. Switch it off.', url: '/charges/c1', tag: id },
+  notice: {
+    ...{ title: 'R-2406 at B2', body: 'The current has ended. Switch it off.', url: '/charges/c1', tag: id },
+    ...{ id, turn: 0 },
+  },
 });
 
 /** The page keeps one for its life. */
@@ -61,6 +66,7 @@ let told: unknown[];
 let listed: AlertDto[];
 let visible: DocumentVisibilityState;
 let stops: (() => void)[];
+let server: ReturnType<typeof fakeServer>;
 
 /** A browser that plays after a tap, shakes, and shows notices by its worker. */
 function browser() {
@@ -150,7 +156,7 @@ beforeEach(() => {
   stops = [];
   listed = [];
   browser();
-  const server = fakeServer('technician');
+  server = fakeServer('technician');
   server.answers['GET /api/alerts'] = () => Response.json(listed);
   server.answers['GET /api/board'] = () => Response.json({ rev: 1, at: iso(start), charges: [], channels: [] });
 });
@@ -221,6 +227,22 @@ describe('an alert that is raised', () => {
     expect(played).toEqual(tonesOf('ready'));
     await pass(5 * minute);
     expect(played).toEqual(tonesOf('ready', 'ready'));
+  });
+});
+
+describe('what its person has set', () => {
+  it('in quiet hours nothing rings till they are over, then what is open does, once', async () => {
+    // 11:00 on the clock of the workshop, which keeps UTC.
+    const settings = { ways: [], quiet: { from: '10:30', to: '11:20' }, alarmsBreakThrough: true };
+    server.answers['GET /api/me/alert-settings'] = () => Response.json(settings);
+    await open();
+    await tap();
+    listed = [alert({ raisedAt: iso(Date.now()) })];
+    says('alert:raised', listed[0]);
+    await pass(18 * minute);
+    expect(played).toEqual([]);
+    await pass(3 * minute);
+    expect(played).toEqual(tonesOf('ready'));
   });
 });
 

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { AlertDto, AlertKind } from '@/shared/contract/alert';
 import { mostUrgent, ringOf } from '@/shared/client/alarm-rings';
+import type { Role } from '@/shared/contract/roles';
 import { contours, vibrationOf, type SoundName } from '@/shared/client/sound-contours';
 
 const raised = Date.parse('2026-06-09T11:00:00Z');
@@ -11,6 +12,8 @@ const alert = (kind: AlertKind, more: Partial<AlertDto> = {}): AlertDto => ({
   chargeId: 'c1',
   title: 'R-2406',
   for: { id: 'ines', name: 'Ines' },
+  forRole: null,
+  turn: 0,
   seen: '',
   checkFirst: '',
   raisedAt: new Date(raised).toISOString(),
@@ -22,9 +25,13 @@ const alert = (kind: AlertKind, more: Partial<AlertDto> = {}): AlertDto => ({
   ...more,
 });
 
+const ines = { id: 'ines', role: 'technician' } as const;
+const bram = { id: 'bram', role: 'technician' } as const;
+
 /** Seconds after it was raised at which an alert sounds in half an hour, looked at every second. */
-function rings(one: AlertDto, person = 'ines', until = 1800): number[] {
+function rings(one: AlertDto, id = 'ines', until = 1800, role: Role = 'technician'): number[] {
   const heard: number[] = [];
+  const person = { id, role };
   for (let s = 0; s <= until; s++) if (ringOf(one, person, raised + (s - 1) * 1000, raised + s * 1000)) heard.push(s);
   return heard;
 }
@@ -58,15 +65,31 @@ describe('when an alert rings', () => {
     expect(rings(passed)).toEqual([600, 900, 1500]);
   });
   it('never heard on this device it rings however old it is, until it is taken', () => {
-    expect(ringOf(alert('charge-done'), 'ines', null, raised + 7_200_000)).toBe('ready');
-    expect(ringOf(alert('charge-done'), 'bram', null, raised + 7_200_000)).toBeNull();
+    expect(ringOf(alert('charge-done'), ines, null, raised + 7_200_000)).toBe('ready');
+    expect(ringOf(alert('charge-done'), bram, null, raised + 7_200_000)).toBeNull();
     const taken = alert('charge-done', { takenBy: { id: 'bram', name: 'Bram' } });
-    expect(ringOf(taken, 'ines', null, raised + 7_200_000)).toBeNull();
+    expect(ringOf(taken, ines, null, raised + 7_200_000)).toBeNull();
   });
   it('rings for its person and, as an alarm, for everybody', () => {
     expect(rings(alert('check-due'), 'bram')).toEqual([]);
     expect(rings(alert('check-due', { for: null }), 'bram')).toEqual([0, 300, 900]);
     expect(rings(alert('overdue'), 'bram', 60)).toEqual([0, 60]);
+  });
+  it('gone on because nobody took it, it rings for the foremen from then, and then for the managers too', () => {
+    const gone = (forRole: 'foreman' | 'manager') =>
+      alert('check-due', { forRole, passedAt: new Date(raised + 600_000).toISOString() });
+    expect(rings(gone('foreman'), 'hella', 1800, 'foreman')).toEqual([600, 900, 1500]);
+    expect(rings(gone('foreman'), 'mara', 1800, 'manager')).toEqual([]);
+    expect(rings(gone('manager'), 'mara', 1800, 'manager')).toEqual([600, 900, 1500]);
+    expect(rings(gone('foreman'), 'bram')).toEqual([]);
+    // A wall's alert is nobody's but the foremen's.
+    const wall = alert('wall-unseen', { level: 'tell', for: null, forRole: 'foreman' });
+    expect(rings(wall, 'bram')).toEqual([]);
+    expect(rings(wall, 'hella', 1800, 'foreman')).toEqual([0]);
+  });
+  it('over a limit of the type it rings every 60 s until somebody has it', () => {
+    for (const kind of ['too-warm', 'over-voltage'] as const)
+      expect(rings(alert(kind, { level: 'alarm' }), 'bram', 150)).toEqual([0, 60, 120]);
   });
   it('of several at once the most urgent is heard', () => {
     expect(mostUrgent(['look-in', 'ready', 'overdue', 'check-due'])).toBe('overdue');
