@@ -1,6 +1,7 @@
 // `npm run bench`. Figures of this machine, to be read, not to pass or fail: that is what the tests are for.
 import os from 'node:os';
 import { benchAlarms } from './alarms';
+import { benchBenchPlan } from './bench-plan';
 import { benchCalibration } from './calibration';
 import { benchCandidates } from './candidates';
 import { benchFirstLoad } from './first-load';
@@ -13,6 +14,7 @@ const quick = {
   step: benchStep,
   plan: benchPlan,
   live: benchLive,
+  'bench-plan': benchBenchPlan,
   candidates: benchCandidates,
   'first-load': benchFirstLoad,
 };

@@ -2,8 +2,7 @@ import { useState } from 'react';
 import { View } from 'react-native';
 import { useFits } from '@/shared/client/bench-plan';
 import { actProblem } from '@/shared/client/charge-acts';
-import { useLookIn } from '@/shared/client/charges';
-import { useLink } from '@/shared/client/link';
+import { useWaitingWrite, useWaitingWrites } from '@/shared/client/waiting/waiting';
 import type { FreeStretchDto, MyDayDto } from '@/shared/contract/bench-plan';
 import { Link } from '@/shared/ui/primitives/link';
 import { useToast } from '@/shared/ui/primitives/toast';
@@ -32,8 +31,8 @@ export function DayList({
   onStale: () => void;
 }) {
   const toast = useToast();
-  const offline = useLink().state === 'down';
-  const lookIn = useLookIn();
+  const lookIn = useWaitingWrite();
+  const waiting = useWaitingWrites();
   const [refused, setRefused] = useState<{ chargeId: string; text: string } | null>(null);
   const fits = useFits(day.day >= today);
   const mine = fits.data?.people.find(({ person }) => person.id === day.person.id)?.stretches ?? [];
@@ -57,16 +56,22 @@ export function DayList({
             lookIn={entry.lookIn}
             next={entry.next && day.day === today}
             now={now}
-            busy={lookIn.isPending && lookIn.variables.id === entry.lookIn.chargeId}
-            offline={offline}
+            busy={lookIn.isPending && lookIn.variables.chargeId === entry.lookIn.chargeId}
+            waits={waiting.some(({ kind, chargeId }) => kind === 'look-in' && chargeId === entry.lookIn.chargeId)}
             problem={entry.next && refused?.chargeId === entry.lookIn.chargeId ? refused.text : null}
             onGo={onGo}
             onDone={() => {
               setRefused(null);
               lookIn.mutate(
-                { id: entry.lookIn.chargeId },
+                { kind: 'look-in', chargeId: entry.lookIn.chargeId, title: entry.lookIn.title, input: {} },
                 {
-                  onSuccess: () => toast({ text: `Looked in at ${entry.lookIn.title}.` }),
+                  onSuccess: (charge) =>
+                    toast({
+                      text:
+                        charge === null
+                          ? `Looked in at ${entry.lookIn.title}. It waits on this device for the connection.`
+                          : `Looked in at ${entry.lookIn.title}.`,
+                    }),
                   onError: (error) => setRefused({ chargeId: entry.lookIn.chargeId, text: actProblem(error) }),
                   onSettled: renew,
                 },

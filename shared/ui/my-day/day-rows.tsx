@@ -88,7 +88,7 @@ export function LookInRow({
   next,
   now,
   busy,
-  offline,
+  waits,
   problem,
   onDone,
   onGo,
@@ -98,7 +98,8 @@ export function LookInRow({
   next: boolean;
   now: number;
   busy: boolean;
-  offline: boolean;
+  /** A visit waits on this device for the connection. */
+  waits: boolean;
   problem: string | null;
   onDone: () => void;
   onGo: (path: string) => void;
@@ -118,7 +119,13 @@ export function LookInRow({
           <Txt kind="small" tone={done ? 'ink3' : late ? 'alarm' : 'ink2'} bold={late}>
             {[
               lookIn.channelName,
-              done ? `done ${clock(at, zone, marks)}` : late ? `${duration((now - at) / 1000, 'minute')} over` : null,
+              done
+                ? `done ${clock(at, zone, marks)}`
+                : waits && next
+                  ? 'done, waits for the connection'
+                  : late
+                    ? `${duration((now - at) / 1000, 'minute')} over`
+                    : null,
             ]
               .filter(Boolean)
               .join(' · ')}
@@ -138,7 +145,7 @@ export function LookInRow({
             title="Looked in"
             label={`Looked in at ${lookIn.title}`}
             busy={busy}
-            disabled={offline}
+            disabled={waits}
             onPress={onDone}
           />
           <Link title="Log a reading" label={`Log a reading of ${lookIn.title}`} href={log} onPress={() => onGo(log)} />

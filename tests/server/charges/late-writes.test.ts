@@ -1,20 +1,7 @@
 /** What was done at the bench without a connection and comes in later: it counts from when it was done. */
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import type { ChargeDto } from '@/shared/contract/charge';
-import {
-  act,
-  alertsOf,
-  at,
-  did,
-  hour,
-  kept,
-  key,
-  makeBench,
-  minute,
-  running,
-  seen,
-  type Bench,
-} from './bench';
+import { act, alertsOf, at, did, hour, kept, key, makeBench, minute, running, seen, type Bench } from './bench';
 
 let bench: Bench;
 beforeEach(async () => {
