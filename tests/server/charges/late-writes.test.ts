@@ -17,7 +17,8 @@ describe('a look-in that comes late', () => {
   test('counts for the look-in of its own time: made at 61 min, told at 100 min, the one of 60 min is done', async () => {
     const charge = await running(bench, { spareId: await bench.spare('S-0001') });
     await bench.live(100 * minute, 5 * minute);
-    expect(await open(charge, 'look-in-due')).toHaveLength(1);
+    // 40 min over it is told as missed.
+    expect(await open(charge, 'look-in-missed')).toHaveLength(1);
     const visit = ago(39 * minute);
     const told = await did(bench, charge, 'look-ins', { at: visit, note: 'clips cool' });
     expect(told.lookIns[0]).toMatchObject({ doneAt: visit, by: { id: 'own-technician' } });
@@ -26,7 +27,7 @@ describe('a look-in that comes late', () => {
       at: visit,
       text: 'Looked in: clips cool.',
     });
-    expect(await open(charge, 'look-in-due')).toEqual([]);
+    for (const kind of ['look-in-due', 'look-in-missed'] as const) expect(await open(charge, kind)).toEqual([]);
   });
 
   test('before the start or in the future is refused at its time', async () => {

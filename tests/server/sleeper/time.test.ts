@@ -15,13 +15,13 @@ const dueOf = (charge: ChargeDto) =>
   charge.lookIns.filter(({ doneAt }) => doneAt === null).map(({ dueAt }) => at(dueAt) - at(charge.startedAt));
 
 describe('a server whose clock is set by an hour', () => {
-  test('ahead: the look-in that has fallen due is asked for once, the later ones stay where they were', async () => {
+  test('ahead: the look-in that has fallen due 30 min ago is told once, as missed; the later ones stay where they were', async () => {
     const charge = await running(bench, { spareId: await bench.spare('S-1') });
     await bench.live(30 * minute, 5 * minute);
     await bench.pass(hour);
     const after = await seen(bench, charge.id);
     expect(at(after.nextLookInAt) - at(charge.startedAt)).toBe(hour);
-    expect(await raised('look-in-due')).toBe(1);
+    expect(await raised('look-in-missed')).toBe(1);
     expect(dueOf(after)).toEqual([hour, 2 * hour]);
     expect(after.startedAt).toBe(charge.startedAt);
   });
