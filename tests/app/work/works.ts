@@ -1,3 +1,4 @@
+import { serverClock } from '@/shared/client/clock';
 import { vi } from 'vitest';
 import type { FitDto, FitsDto, FreeStretchDto, MyDayDto, PlanBlockDto } from '@/shared/contract/bench-plan';
 import type { Role } from '@/shared/contract/roles';
@@ -166,4 +167,8 @@ export function workServer(role: Role) {
 export type WorkServer = ReturnType<typeof workServer>;
 
 /** Stands the clock of the page still, at the moment of the drawings or at another. */
-export const atClock = (ms: number) => vi.useFakeTimers({ now: ms, toFake: ['Date'] });
+export const atClock = (ms: number) => {
+  vi.useFakeTimers({ now: ms, toFake: ['Date'] });
+  // A test before it may have left the clock later: the app takes that for a phone that was set back.
+  serverClock.correct(0);
+};
