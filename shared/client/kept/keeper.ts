@@ -63,13 +63,14 @@ export async function openWithout(client: QueryClient): Promise<SessionDto | nul
 }
 
 /** Answers of one moment are written together, ms. */
-const gatherMs = 1500;
+const gatherMs = 500;
 
 /** Keeps what is answered to this person from now on. @returns stops it */
 export function startKeeping(client: QueryClient, owner: string): () => void {
   const fresh = new Map<string, QueryKey>();
   let timer: ReturnType<typeof setTimeout> | undefined;
   const write = () => {
+    clearTimeout(timer);
     timer = undefined;
     const answers = [...fresh.values()].flatMap((key) => {
       const state = client.getQueryState(key);
@@ -101,11 +102,14 @@ export function startKeeping(client: QueryClient, owner: string): () => void {
     if (type === 'added' && isKept(query.queryKey) && linkNow().state === 'down') bring();
   });
   for (const query of client.getQueryCache().getAll()) gather(query.queryKey);
+  // A page that is left may not come back to it.
+  document.addEventListener('visibilitychange', write);
   const offDown = onDown(bring);
   return () => {
     clearTimeout(timer);
     clearTimeout(bringing);
     offCache();
+    document.removeEventListener('visibilitychange', write);
     offDown();
   };
 }
