@@ -98,6 +98,7 @@ describeInBrowser('a phone that loses its connection', () => {
       for (const title of ['R-2411', 'R-2409', 'R-2413']) {
         await page.goto(`/charges/${ids[title]}`);
         await heading(page, title).waitFor();
+        await page.waitForTimeout(2000);
       }
       await page.goto('/bench');
       await words(page, 'R-2411').waitFor();
