@@ -2,7 +2,7 @@
 import * as z from 'zod/mini';
 import { id, instant, optionalInstant, optionalText, reason, text, type Instant, type PersonRef } from './common';
 import { optionalQuantity, quantity } from './quantity';
-import { workPriorities, type WorkPriority } from './work-terms';
+import { workPriorities } from './work-terms';
 
 const workShape = {
   /** 'Brake bleed' */
