@@ -114,7 +114,8 @@ function plotKill(during: 'acts' | 'time'): void {
   if (random() < 0.35) killAtMessageTo = service;
   else {
     kills[during === 'acts' ? 'during acts' : 'while time goes on'] += 1;
-    setTimeout(() => server.kill(), random() * (during === 'acts' ? 40 : 200));
+    if (during === 'acts') client.strikeNextWrite(() => server.kill());
+    else setTimeout(() => server.kill(), random() * 200);
   }
 }
 
@@ -153,7 +154,7 @@ test(`killed ${killsWanted} times during ${transitionsWanted} transitions of cha
     EXPO_BASE_URL: phones.url,
     NODE_EXTRA_CA_CERTS: certificate,
   });
-  client = makeClient(server, dataDir);
+  client = makeClient(server, dataDir, random);
   await equipPeople();
   const parts = { client, meterId: shop.meterId, random, now: () => server.now(), takeSpare: () => shop.spares.pop()! };
   const { A1, B1, C1 } = shop.channels;

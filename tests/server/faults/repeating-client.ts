@@ -21,6 +21,8 @@ export interface RepeatingClient {
   get(path: string, role?: Role): Promise<Answer>;
   post(path: string, body: object, write?: Write, role?: Role): Promise<Answer>;
   patch(path: string, body: object, role: Role): Promise<Answer>;
+  /** Calls back once, at a moment between the next write with a key and its usual answer. */
+  strikeNextWrite(strike: () => void): void;
   /** What became of the writes whose first answer never came. */
   unanswered: { repeated: number; doneAlready: number; answerLost: number };
 }
@@ -28,9 +30,13 @@ export interface RepeatingClient {
 /** No server is away for longer in this test. */
 const MOST_TRIES = 50;
 
-export function makeClient(server: MortalServer, dataDir: string): RepeatingClient {
+/** @param random seeded, for the moments of strikes */
+export function makeClient(server: MortalServer, dataDir: string, random: () => number): RepeatingClient {
   const secrets = loadSecrets(dataDir);
   const unanswered = { repeated: 0, doneAlready: 0, answerLost: 0 };
+  let strike: (() => void) | null = null;
+  /** What a write takes, a mean that forgets, ms. */
+  let usualMs = 40;
 
   /** Whether the effect of a key is committed, as another process sees it. */
   function isCommitted(key: string): boolean {
@@ -55,6 +61,11 @@ export function makeClient(server: MortalServer, dataDir: string): RepeatingClie
       if (body) headers['content-type'] = 'application/json';
       if (write.key !== undefined) headers['idempotency-key'] = write.key;
       if (write.rev !== undefined) headers['if-match'] = `"${write.rev}"`;
+      const sentAt = performance.now();
+      if (write.key !== undefined && strike) {
+        setTimeout(strike, random() * usualMs);
+        strike = null;
+      }
       try {
         const answer = await fetch(`${server.url}${path}`, {
           method,
@@ -62,6 +73,7 @@ export function makeClient(server: MortalServer, dataDir: string): RepeatingClie
           body: body ? JSON.stringify(body) : null,
         });
         const text = await answer.text();
+        if (write.key !== undefined) usualMs += 0.2 * (performance.now() - sentAt - usualMs);
         return { status: answer.status, body: text === '' ? null : (JSON.parse(text) as unknown) };
       } catch {
         if (write.key === undefined) continue;
@@ -75,6 +87,7 @@ export function makeClient(server: MortalServer, dataDir: string): RepeatingClie
 
   return {
     unanswered,
+    strikeNextWrite: (next) => void (strike = next),
     get: (path, role = 'technician') => send('GET', path, null, {}, role),
     async post(path, body, write = {}, role = 'technician') {
       const answer = await send('POST', path, body, write, role);
