@@ -4,9 +4,9 @@ import http from 'node:http';
 import os from 'node:os';
 import path from 'node:path';
 import Database from 'better-sqlite3';
-import { build } from 'esbuild';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { databaseFile } from '@/server/data-files';
+import { bundleServer } from '@/tests/support/bundled-server';
 
 const root = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-process-'));
 afterAll(() => fs.rmSync(root, { recursive: true, force: true }));
@@ -21,28 +21,9 @@ const workshop = {
 };
 const mode = (file: string) => (fs.statSync(file).mode & 0o777).toString(8);
 
-// The process itself, bundled as `npm run build` does it: so its worker threads are found there, too.
 const bundle = path.join(process.cwd(), 'node_modules/.cache/bidewell-process-test');
 const children: ChildProcess[] = [];
-beforeAll(async () => {
-  await build({
-    entryPoints: [
-      { in: 'server/index.ts', out: 'main' },
-      { in: 'server/workers/bcrypt.ts', out: 'workers/bcrypt' },
-      { in: 'server/workers/bench.ts', out: 'workers/bench' },
-      { in: 'server/workers/back-up.ts', out: 'workers/back-up' },
-    ],
-    outdir: bundle,
-    bundle: true,
-    platform: 'node',
-    target: 'node20',
-    format: 'esm',
-    packages: 'external',
-    keepNames: true,
-    tsconfig: 'server/tsconfig.json',
-    logLevel: 'error',
-  });
-});
+beforeAll(() => bundleServer(bundle));
 afterAll(() => {
   for (const child of children) if (child.exitCode === null) child.kill('SIGKILL');
   fs.rmSync(bundle, { recursive: true, force: true });
