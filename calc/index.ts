@@ -70,3 +70,7 @@ export { planBench, earliestDueFirst } from './bench/plan-bench';
 export { planFills } from './bench/plan-fills';
 export { assignLookIns } from './bench/assign-look-ins';
 export { intersect, merge, subtract } from './bench/stretches';
+
+// Waits: the simulator, the replay of what happened, and what the figures say.
+export * from './waits/waits-types';
+export { simulateQueue } from './waits/simulate-queue';
