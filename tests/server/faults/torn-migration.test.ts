@@ -11,7 +11,7 @@ import { listBackups } from '@/server/backup-files';
 import { backupFolder, databaseFile } from '@/server/data-files';
 import { makeDataSource } from '@/server/data-source';
 import { migrations } from '@/server/migrations/all';
-import { bundleServer } from '@/tests/support/bundled-server';
+import { bundleServer } from '@/server/cli/bundle.mjs';
 import { hour, kept, makeBench, minute, running } from '../charges/bench';
 
 const bundle = path.join(process.cwd(), 'node_modules/.cache/bidewell-torn-test');
