@@ -13,6 +13,7 @@ import type { Limits } from './services/limits';
 import type { Metrics } from './services/metrics';
 import type { Passwords } from './services/passwords';
 import type { Secrets } from './services/secrets';
+import type { WallBoards } from './services/wall-boards';
 
 /** What every service gets. Made once in create-app. */
 export interface Deps {
@@ -21,6 +22,8 @@ export interface Deps {
   config: Config;
   log: Logger;
   hub: LiveHub;
+  /** Boards of the walls, read once for all who ask. The hub tells them what changed. */
+  wallBoards: WallBoards;
   sleeper: Sleeper;
   /** What goes out of the house. */
   outbox: Outbox;

@@ -27,6 +27,8 @@ import { makeMetrics } from './services/metrics';
 import { makePasswords } from './services/passwords';
 import { loadSecrets } from './services/secrets';
 import { version } from './services/version';
+import { wallBoard } from './services/board.service';
+import { makeWallBoards } from './services/wall-boards';
 import { sweepPhotos } from './sweep-photos';
 
 /** Requests under way get this long to end when the server stops, ms. */
@@ -113,7 +115,8 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     await assertDurable(dataSource);
     const migrations = await migrate(dataSource, config.dataDir, clock.now(), log);
     if (migrations.length > 0) log.info({ migrations }, 'database migrated');
-    const hub = makeSocketHub({ config, dataSource, secrets, clock, log });
+    const wallBoards = makeWallBoards((workshopId, now) => wallBoard({ dataSource }, workshopId, now));
+    const hub = makeSocketHub({ config, dataSource, secrets, clock, log, wallBoards });
     const ways = makeWays(config);
     const dispatcher = makeDispatcher({ dataSource, clock, log, hub, ways, random: Math.random });
     const outbox = { poke: dispatcher.poke, pushKey: ways.pushKey, eMail: ways.eMail !== null };
@@ -127,6 +130,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       config,
       log,
       hub,
+      wallBoards,
       sleeper,
       outbox,
       lifecycle,
