@@ -6,7 +6,7 @@ import { useGate } from '@/shared/client/gate';
 import { missingHere } from '@/shared/client/secure-context';
 import { useMember } from '@/shared/client/session';
 import { useApproveWall, useRefuseWall, useWallRequest } from '@/shared/client/walls';
-import { readQuantity } from '@/shared/contract/quantity';
+import { readQuantity } from '@/shared/contract/read-quantity';
 import { approveWallSchema, userCode } from '@/shared/contract/wall';
 import { FormStack, FieldPair } from '@/shared/ui/auth/form-stack';
 import { ProblemLine } from '@/shared/ui/auth/problem-line';

@@ -1,11 +1,12 @@
 import Database from 'better-sqlite3';
 import fs from 'node:fs';
 import path from 'node:path';
+import { backUpKeys } from './backup-keys';
 
 /**
  * Copies a database page by page, what is still in its write-ahead log included, and checks the copy before it gets
- * its name. Writers are not held up.
- * @param source database file
+ * its name. Writers are not held up. The keys of the installation are laid beside it.
+ * @param source database file in its data folder
  * @param folder where the copy goes; made when missing
  * @param now instant in the copy's name
  * @param kind 'clock': made by the clock, and so removed by it one day
@@ -42,6 +43,8 @@ export async function backUp(source: string, folder: string, now: Date, kind?: '
     copy.close();
   }
   fs.chmodSync(unfinished, 0o600);
+  // First the keys: a copy that has its name is whole.
+  backUpKeys(path.dirname(source), file);
   fs.renameSync(unfinished, file);
   return file;
 }

@@ -9,6 +9,10 @@ export function prepareDataFolder(dataDir: string): void {
 
 /** Where the database lies within the data folder. */
 export const databaseFile = (dataDir: string): string => path.join(dataDir, 'bidewell.sqlite');
+/** What sessions and devices are known by. */
+export const secretFile = (dataDir: string): string => path.join(dataDir, 'secret.key');
+/** What push services of browsers know the server by. */
+export const pushKeyFile = (dataDir: string): string => path.join(dataDir, 'push.key');
 /** Where the photos of repairs lie. */
 export const photoFolder = (dataDir: string): string => path.join(dataDir, 'photos');
 /** Where copies of it go unless somebody says otherwise. */

@@ -3,6 +3,7 @@ import { createHash } from 'node:crypto';
 import fs from 'node:fs';
 import path from 'node:path';
 import { backUp } from './back-up';
+import { bringKeys, keysOf } from './backup-keys';
 import { backupFolder, databaseFile, photoFolder, prepareDataFolder } from './data-files';
 import { lockFolder } from './folder-lock';
 import { migrations } from './migrations/all';
@@ -12,6 +13,8 @@ export interface Restored {
   /** Copy of what was in the data folder before; null: nothing was. */
   before: string | null;
   photos: number;
+  /** Keys of the installation that came with the copy; 0: those of the folder stay. */
+  keys: number;
   /** Photos that the copy names and that are neither in the backup nor in the data folder. */
   missing: string[];
 }
@@ -23,8 +26,9 @@ interface PhotoRow {
 
 /**
  * Brings a copy back into a data folder: the copy is checked, what is there now is copied into the backups, then the
- * database is exchanged in one step and the photos it names are laid beside it. Until that step nothing is changed.
- * @param copy file made by a backup, with its `photos` beside it
+ * database is exchanged in one step, and the keys and photos that belong to it are laid beside it. Until that step
+ * nothing is changed.
+ * @param copy file made by a backup, with its `.keys` and its `photos` beside it
  * @param now instant in the name of the copy of what is there now
  * @throws Error where a server works on the folder, or the copy is damaged or of a later version
  */
@@ -34,6 +38,7 @@ export async function restore(copy: string, dataDir: string, now: Date): Promise
   const lock = lockFolder(dataDir);
   try {
     const rows = photosOf(copy);
+    const keys = keysOf(copy);
     const target = databaseFile(dataDir);
     const fresh = `${target}.restored`;
     fs.copyFileSync(copy, fresh);
@@ -42,8 +47,10 @@ export async function restore(copy: string, dataDir: string, now: Date): Promise
     // Of the database that goes: with the new one they would be taken for its own.
     for (const suffix of ['-wal', '-shm']) fs.rmSync(`${target}${suffix}`, { force: true });
     fs.renameSync(fresh, target);
+    // The copy knows browsers that have subscribed with these: with others no push would reach them.
+    const brought = keys === null ? 0 : bringKeys(keys, dataDir);
     const missing = bringPhotos(rows, path.join(path.dirname(copy), 'photos'), photoFolder(dataDir));
-    return { file: target, before, photos: rows.length - missing.length, missing };
+    return { file: target, before, photos: rows.length - missing.length, keys: brought, missing };
   } finally {
     lock.release();
   }

@@ -1,5 +1,6 @@
 /** An alert as it goes out of the house. */
-import { alertKindNames, alertPath, type AlertLevel } from '@/shared/contract/alert';
+import type { AlertLevel } from '@/shared/contract/alert';
+import { alertKindNames, alertPath } from '@/shared/contract/alert-kinds';
 import type { Alert } from '../entities/alert';
 import type { OutboxEntry } from '../entities/outbox-entry';
 import { clockText, durationText } from '../services/charge-words';

@@ -1,6 +1,6 @@
 import fs from 'node:fs';
-import path from 'node:path';
 import webPush from 'web-push';
+import { pushKeyFile } from '../data-files';
 
 /** By these a push service knows that it is still the same server (RFC 8292). */
 export interface VapidKeys {
@@ -9,8 +9,6 @@ export interface VapidKeys {
   publicKey: string;
   privateKey: string;
 }
-
-export const pushKeyFile = (dataDir: string): string => path.join(dataDir, 'push.key');
 
 /** Reads the keys of the data folder; makes them (mode 600) where there are none. Other keys would end every subscription. */
 export function loadPushKeys(dataDir: string): Omit<VapidKeys, 'subject'> {

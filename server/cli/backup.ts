@@ -4,6 +4,7 @@ import fs from 'node:fs';
 import path from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { backUp } from '../back-up';
+import { keysBeside } from '../backup-keys';
 import { backUpPhotos } from '../back-up-photos';
 import { readConfig } from '../config';
 import { backupFolder, databaseFile, photoFolder } from '../data-files';
@@ -14,12 +15,12 @@ async function main(): Promise<void> {
   const file = await backUp(databaseFile(dataDir), folder, new Date());
   const mebibytes = (fs.statSync(file).size / 1024 / 1024).toFixed(1);
   console.log(`bidewell: ${file} (${mebibytes} MiB, checked)`);
+  if (fs.existsSync(keysBeside(file)))
+    console.log(`bidewell: ${keysBeside(file)} (the keys of this installation: keep them as safe as the data)`);
   const photos = path.join(folder, 'photos');
   const { there, copied, missing } = backUpPhotos(file, photoFolder(dataDir), photos);
   if (there > 0) console.log(`bidewell: ${photos} (${there} photos of that copy, ${copied} of them new)`);
-  console.log(
-    'bidewell: to restore, stop the server, remove bidewell.sqlite, -wal and -shm from the data folder, put this copy there as bidewell.sqlite, and the folder photos beside it',
-  );
+  console.log(`bidewell: to restore, stop the server and run: npm run restore -- ${file}`);
   // Said last, so that it is not missed; the database is copied all the same.
   if (missing.length > 0)
     throw new Error(`These photos are gone or damaged and are in no copy: ${missing.join(', ')}.`);

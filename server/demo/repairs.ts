@@ -114,14 +114,19 @@ const reading = (groupVolts: number[], change: Partial<PackReadingInput> = {}): 
   ...change,
 });
 
-/** A hand meter at the module: a millivolt beside what the pack says. */
-const atModule = (readingId: string, volts: readonly number[], pack: PackInput, position: string) => ({
-  readingId,
-  modulePosition: position,
-  groupVolts: groupsAt(pack, position).map((group) => Number((volts[group]! + 0.001).toFixed(3))),
-  healthyGroup: { group: GROUPS - 1, volts: Number((volts[GROUPS - 1]! + 0.001).toFixed(3)) },
-  meterId: handMeterId,
-});
+/** A hand meter at the module, and at a group of another one: a millivolt beside what the pack says. */
+function atModule(readingId: string, volts: readonly number[], pack: PackInput, position: string) {
+  const metered = (group: number): number => Number((volts[group]! + 0.001).toFixed(3));
+  const groups = groupsAt(pack, position);
+  const healthy = groups.includes(GROUPS - 1) ? 0 : GROUPS - 1;
+  return {
+    readingId,
+    modulePosition: position,
+    groupVolts: groups.map(metered),
+    healthyGroup: { group: healthy, volts: metered(healthy) },
+    meterId: handMeterId,
+  };
+}
 
 /** The one whose two sources disagree: nothing is taken from its reading before somebody has decided. */
 const DISAGREES = 'R-2423';

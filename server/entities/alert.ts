@@ -1,5 +1,6 @@
 import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
-import type { AlertKind, AlertLevel } from '@/shared/contract/alert';
+import type { AlertLevel } from '@/shared/contract/alert';
+import type { AlertKind } from '@/shared/contract/alert-kinds';
 import {
   idColumn,
   instantColumn,

@@ -1,5 +1,5 @@
 import { Check, Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
-import type { WorkPriority } from '@/shared/contract/work';
+import type { WorkPriority } from '@/shared/contract/work-terms';
 import {
   flagColumn,
   idColumn,

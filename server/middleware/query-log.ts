@@ -6,8 +6,8 @@ import type { Metrics } from '../services/metrics';
 export const SLOW_QUERY_MS = 100;
 
 /**
- * What TypeORM has to say, in the log of the process. The parameters of a statement are left out: they are what people
- * typed.
+ * What TypeORM has to say, and services that hold nothing but its manager, in the log of the process; an Error with its
+ * stack and cause. The parameters of a statement are left out: they are what people typed.
  */
 export const queryLog = (log: Logger, metrics: Metrics): TypeOrmLogger => ({
   logQuery: () => {},
@@ -18,7 +18,11 @@ export const queryLog = (log: Logger, metrics: Metrics): TypeOrmLogger => ({
   },
   logSchemaBuild: () => {},
   logMigration: (message) => log.debug(message),
-  log: (level, message: unknown) => (level === 'warn' ? log.warn(String(message)) : log.debug(String(message))),
+  log: (level, message: unknown) => {
+    const [what, text] = message instanceof Error ? [{ err: message }, message.message] : [{}, String(message)];
+    if (level === 'warn') log.warn(what, text);
+    else log.debug(what, text);
+  },
 });
 
 /** Lists of columns run to pages. */

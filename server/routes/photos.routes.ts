@@ -1,5 +1,6 @@
 import type { Response } from 'express';
-import { MOST_PHOTO_BYTES, photoField, photoNoteSchema } from '@/shared/contract/photo';
+import { photoNoteSchema } from '@/shared/contract/photo';
+import { MOST_PHOTO_BYTES, photoField } from '@/shared/contract/photo-upload';
 import { addPhoto, notePhoto, photoBytes, removePhoto } from '../services/photos.service';
 import type { Policy, RoutesModule } from './define-route';
 

@@ -3,6 +3,7 @@ import fs from 'node:fs';
 import path from 'node:path';
 import { Worker } from 'node:worker_threads';
 import type { Logger } from 'pino';
+import { keysBeside } from '../backup-keys';
 import { backupsToRemove, listBackups, type BackupFile } from '../backup-files';
 import type { Clock } from '../clock';
 import { backupFolder, databaseFile, photoFolder } from '../data-files';
@@ -65,7 +66,7 @@ export function makeBackups(parts: { dataDir: string; everyHours: number; clock:
       const done = await run(order);
       failed = null;
       const gone = backupsToRemove(listBackups(folder), now);
-      for (const { file } of gone) fs.rmSync(file, { force: true });
+      for (const { file } of gone) for (const one of [keysBeside(file), file]) fs.rmSync(one, { force: true });
       log.info({ file: done.file, bytes: done.bytes, removed: gone.length }, 'data copied');
       if (done.missing.length > 0) log.error({ files: done.missing }, 'photos that are gone or damaged are in no copy');
       return done;

@@ -4,7 +4,7 @@
  * told once, also across restarts.
  */
 import type { EntityManager } from 'typeorm';
-import type { AlertKind } from '@/shared/contract/alert';
+import type { AlertKind } from '@/shared/contract/alert-kinds';
 import { askedForOnly, waysOf } from '@/shared/contract/alert-settings';
 import type { Alert } from '../entities/alert';
 import { clearAlert, raiseAlert } from '../alerts/turns';

@@ -1,11 +1,7 @@
 /** The end of a repair: what became of the module taken out, the hand-over, the archive, and deleting. */
 import { groupsAt } from '@/shared/contract/pack';
-import {
-  moduleFateNames,
-  repairStepNames,
-  type RemovedModuleInput,
-  type RepairPageDto,
-} from '@/shared/contract/repair';
+import { moduleFateNames, type RemovedModuleInput, type RepairPageDto } from '@/shared/contract/repair';
+import { repairStepNames } from '@/shared/contract/repair-steps';
 import type { Deps, Member } from '../deps';
 import { conflict, invalid } from '../errors/domain-error';
 import { insertRemovedModule } from '../repositories/repair-rows.repository';

@@ -1,6 +1,7 @@
 /** The sentences of a hand-over sheet, out of the rows of its repair alone: no clock is asked. */
 import { aimOf, groupsAt } from '@/shared/contract/pack';
-import { advisedOutcomeNames, moduleFateNames, repairStepNames, type RepairStepDto } from '@/shared/contract/repair';
+import { advisedOutcomeNames, moduleFateNames, type RepairStepDto } from '@/shared/contract/repair';
+import { repairStepNames } from '@/shared/contract/repair-steps';
 import type { FittedSpare } from '../entities/fitted-spare';
 import type { ModuleType } from '../entities/module-type';
 import type { Spare } from '../entities/spare';

@@ -22,12 +22,16 @@ export async function isAnybodyThere(
 
 /**
  * Null: nobody is there for it, or none is due. Null too where the day cannot be laid out because another charge cannot
- * be reckoned: the alert must come all the same.
+ * be reckoned: the alert must come all the same. What failed is said in the log.
  */
 export async function lookInPerson(manager: EntityManager, file: ChargeFile, now: number): Promise<string | null> {
   try {
     return await assignedPerson(manager, file, now);
-  } catch {
+  } catch (error) {
+    const failed = new Error(`who looks in at charge ${file.charge.id} is not known: its own person is told`, {
+      cause: error,
+    });
+    manager.dataSource.logger.log('warn', failed);
     return null;
   }
 }

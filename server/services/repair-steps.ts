@@ -1,6 +1,7 @@
 import type { PersonRef } from '@/shared/contract/common';
 import { aimOf } from '@/shared/contract/pack';
-import { repairSteps as stepOrder, type RepairStep, type RepairStepDto } from '@/shared/contract/repair';
+import type { RepairStepDto } from '@/shared/contract/repair';
+import { repairSteps as stepOrder, type RepairStep } from '@/shared/contract/repair-steps';
 import { personRef } from './alert-dto';
 import { toInstant } from './instants';
 import { packVerdict } from './pack-numbers';

@@ -1,7 +1,8 @@
 import { Readable } from 'node:stream';
 import { DateTime } from 'luxon';
 import type { EntityManager } from 'typeorm';
-import { repairStepNames, type RepairsQuery, type RepairState } from '@/shared/contract/repair';
+import type { RepairsQuery, RepairState } from '@/shared/contract/repair';
+import { repairStepNames } from '@/shared/contract/repair-steps';
 import type { Deps, Member } from '../deps';
 import { listRepairs } from '../repositories/repairs.repository';
 import { workshopForPlans } from '../repositories/workshop-for-plans.repository';

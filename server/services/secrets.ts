@@ -1,6 +1,6 @@
 import { createHmac, createSecretKey, hkdfSync, randomBytes, timingSafeEqual, type KeyObject } from 'node:crypto';
 import fs from 'node:fs';
-import path from 'node:path';
+import { secretFile } from '../data-files';
 
 /** Keys of this installation, all from one secret that never leaves the data folder. */
 export interface Secrets {
@@ -24,7 +24,7 @@ export function secretsFrom(secret: Buffer): Secrets {
 
 /** Reads the secret of the data folder; makes it (mode 600) where there is none. */
 export function loadSecrets(dataDir: string): Secrets {
-  const file = path.join(dataDir, 'secret.key');
+  const file = secretFile(dataDir);
   if (!fs.existsSync(file))
     fs.writeFileSync(file, `${randomBytes(32).toString('base64')}\n`, { mode: 0o600, flag: 'wx' });
   fs.chmodSync(file, 0o600);

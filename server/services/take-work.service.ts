@@ -1,5 +1,6 @@
 /** Taking a piece of other work, and giving it to somebody. */
-import { leastPartMinutes, type TakeWorkInput, type WorkDto } from '@/shared/contract/work';
+import type { TakeWorkInput, WorkDto } from '@/shared/contract/work';
+import { leastPartMinutes } from '@/shared/contract/work-terms';
 import type { Deps, Member } from '../deps';
 import type { Work } from '../entities/work';
 import type { WorkStint } from '../entities/work-stint';

@@ -1,6 +1,7 @@
 /** Other work: the list, one piece, adding one and changing what was written down. */
 import type { EntityManager } from 'typeorm';
-import { workWeights, type WorkDto, type WorkInput, type WorkListDto, type WorkQuery } from '@/shared/contract/work';
+import type { WorkDto, WorkInput, WorkListDto, WorkQuery } from '@/shared/contract/work';
+import { workWeights } from '@/shared/contract/work-terms';
 import type { Deps, Member } from '../deps';
 import { Work } from '../entities/work';
 import { invalid } from '../errors/domain-error';

@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useEffect, useRef } from 'react';
-import { alertPath, type AlertDto } from '@/shared/contract/alert';
+import type { AlertDto } from '@/shared/contract/alert';
+import { alertPath } from '@/shared/contract/alert-kinds';
 import { concerns, isOpen, mostUrgent, ringOf, ringsSince, type Hearer } from './alarm-rings';
 import { alertSettingsQuery, isHeardHere, useAlertSettings } from './alert-settings';
 import { alertsQuery, useAlerts } from './alerts';

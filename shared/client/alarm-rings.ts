@@ -1,5 +1,6 @@
 /** When an alert rings, as a pure rule: raised once, again where the look says so, until somebody has it. */
-import type { AlertDto, AlertKind } from '@/shared/contract/alert';
+import type { AlertDto } from '@/shared/contract/alert';
+import type { AlertKind } from '@/shared/contract/alert-kinds';
 import type { Role } from '@/shared/contract/roles';
 import type { SoundName } from './sound-contours';
 

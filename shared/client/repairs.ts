@@ -13,7 +13,8 @@ import type {
   SecondSourceInput,
   TakeTargetInput,
 } from '@/shared/contract/pack-reading';
-import { photoField, type PhotoNoteInput } from '@/shared/contract/photo';
+import type { PhotoNoteInput } from '@/shared/contract/photo';
+import { photoField } from '@/shared/contract/photo-upload';
 import type {
   FitAsItIsInput,
   AdvisedInput,

@@ -1,6 +1,7 @@
 /** Where each person's alerts go, and what could not be brought to them. */
 import * as z from 'zod/mini';
-import { alertKinds, alertLevels, type AlertKind, type AlertLevel } from './alert';
+import { alertLevels, type AlertLevel } from './alert';
+import { alertKinds, type AlertKind } from './alert-kinds';
 import type { Instant, PersonRef } from './common';
 import { timeOfDay } from './workshop';
 

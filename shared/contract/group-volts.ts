@@ -1,6 +1,7 @@
 /** Group voltages against the type they belong to: one set of sentences for the form and the API. */
 import * as z from 'zod/mini';
-import { quantity, readQuantity } from './quantity';
+import { quantity } from './quantity';
+import { readQuantity } from './read-quantity';
 
 export interface TypeWindow {
   groupsInSeries: number;

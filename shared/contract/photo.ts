@@ -4,11 +4,6 @@ import { id, optionalText, type Instant, type PersonRef } from './common';
 import type { ModuleFate } from './repair';
 import type { SpareInput } from './spare';
 
-/** Most bytes of an uploaded picture: what the largest phone cameras make of one. */
-export const MOST_PHOTO_BYTES = 16 * 1024 * 1024;
-/** Name of the one part of the upload. */
-export const photoField = 'photo';
-
 export const photoSights = ['none', 'swelling', 'leak', 'damage'] as const;
 export type PhotoSight = (typeof photoSights)[number];
 export const photoSightNames: Record<PhotoSight, string> = {

@@ -6,19 +6,7 @@ import { packSchema, type PackDto } from './pack';
 import type { ComputedTargetDto, PackReadingDto, SecondSourceDto, TargetDto } from './pack-reading';
 import type { ModuleConditionDto, PhotoDto } from './photo';
 import type { Band } from './plan';
-
-/** The seven steps of the strip, in their order. */
-export const repairSteps = ['read', 'second-source', 'target', 'spare', 'charge', 'fit', 'prove'] as const;
-export type RepairStep = (typeof repairSteps)[number];
-export const repairStepNames: Record<RepairStep, string> = {
-  read: 'Read',
-  'second-source': 'Second source',
-  target: 'Target',
-  spare: 'Spare',
-  charge: 'Charge',
-  fit: 'Fit',
-  prove: 'Prove',
-};
+import type { RepairStep } from './repair-steps';
 
 const repairShape = {
   /** In the workshop's own words: 'Grey van'. */

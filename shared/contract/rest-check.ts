@@ -2,7 +2,7 @@
 import * as z from 'zod/mini';
 import { restCheckSchema, type RestCheckInput } from './charge';
 import { groupCountProblem, groupVoltsProblem, type TypeWindow } from './group-volts';
-import { readQuantity } from './quantity';
+import { readQuantity } from './read-quantity';
 
 /** A tolerance under this is not judged by hundredths of a volt. */
 const THREE_DECIMALS_BELOW_VOLTS = 0.01;

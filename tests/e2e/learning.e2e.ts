@@ -111,14 +111,14 @@ describeInBrowser('what a charge teaches, on a technician’s phone', () => {
 
       const alerts = await asked<AlertDto[]>('/alerts');
       const standing = alerts.filter(
-        ({ kind, chargeId, clearedAt }) => kind === 'odd-reading' && chargeId === ids['R-2411'] && clearedAt === null,
+        ({ kind, chargeId, clearedAt }) => kind === 'no-current' && chargeId === ids['R-2411'] && clearedAt === null,
       );
       expect(standing.map(({ level, seen }) => `${level}: ${seen}`)).toEqual([
         expect.stringMatching(/^alarm: No current flows\. 10\.0\sA was expected\.$/),
       ]);
       await page.goto('/alerts');
       const alert = page
-        .getByRole('region', { name: /^Odd reading, R-2411/ })
+        .getByRole('region', { name: /^No current, R-2411/ })
         .locator('visible=true')
         .first();
       await alert.waitFor();
@@ -148,7 +148,7 @@ describeInBrowser('what a charge teaches, on a technician’s phone', () => {
       expect({ table: await taught.innerText(), learned: (await charge('R-2411')).learned }).toEqual(before);
       await page.goto('/alerts');
       await heading(page, 'Alerts').waitFor();
-      await expect.poll(() => page.getByRole('region', { name: /^Odd reading, R-2411/ }).count(), patience).toBe(0);
+      await expect.poll(() => page.getByRole('region', { name: /^No current, R-2411/ }).count(), patience).toBe(0);
       expect(technician.problems).toEqual([]);
     },
     slowTest,

@@ -37,8 +37,8 @@ async function wrongClock(context: BrowserContext): Promise<void> {
   }, phoneAheadMs);
 }
 
-/** The app is kept, this worker answers for the page, and what was answered so far has been written down. */
-async function untilKept(page: Page): Promise<void> {
+/** The app is kept, and this worker answers for the page. */
+async function untilShellKept(page: Page): Promise<void> {
   await expect
     .poll(
       () =>
@@ -49,8 +49,31 @@ async function untilKept(page: Page): Promise<void> {
       patience,
     )
     .toBe(true);
-  await page.waitForTimeout(3000);
 }
+
+/** Keys of the answers that are written down on this device. */
+const keptKeys = (page: Page): Promise<string[]> =>
+  page.evaluate(async () => {
+    // Opened before the app has made it, the database would be there without its store.
+    if (!(await indexedDB.databases()).some(({ name }) => name === 'bidewell-answers')) return [];
+    return new Promise<string[]>((resolve, reject) => {
+      const open = indexedDB.open('bidewell-answers');
+      open.onerror = () => reject(open.error);
+      open.onsuccess = () => {
+        const keys = open.result.transaction('answers').objectStore('answers').getAllKeys();
+        keys.onsuccess = () => {
+          open.result.close();
+          resolve(keys.result.map(String));
+        };
+      };
+    });
+  });
+
+/** Waits until the answer with this key is written down, whoever it was given to. */
+const untilKept = (page: Page, key: string[]): Promise<void> =>
+  expect
+    .poll(async () => (await keptKeys(page)).some((one) => one.endsWith(` ${JSON.stringify(key)}`)), patience)
+    .toBe(true);
 
 describeInBrowser('a phone that loses its connection', () => {
   let house: House;
@@ -98,11 +121,13 @@ describeInBrowser('a phone that loses its connection', () => {
       for (const title of ['R-2411', 'R-2409', 'R-2413']) {
         await page.goto(`/charges/${ids[title]}`);
         await heading(page, title).waitFor();
-        await page.waitForTimeout(2000);
+        await untilKept(page, ['charge', ids[title]!]);
       }
       await page.goto('/bench');
       await words(page, 'R-2411').waitFor();
-      await untilKept(page);
+      await untilShellKept(page);
+      await untilKept(page, ['board']);
+      await untilKept(page, ['session']);
       const before = { running: await chargeOf('R-2411'), due: await chargeOf('R-2409') };
 
       await goAway();
@@ -217,26 +242,7 @@ describeInBrowser('a phone that loses its connection', () => {
     await page.goto('/more');
     await button(page, /^Sign out/).click();
     await page.waitForURL('**/sign-in');
-    await expect
-      .poll(
-        () =>
-          page.evaluate(
-            () =>
-              new Promise<number>((resolve, reject) => {
-                const open = indexedDB.open('bidewell-answers');
-                open.onerror = () => reject(open.error);
-                open.onsuccess = () => {
-                  const count = open.result.transaction('answers').objectStore('answers').count();
-                  count.onsuccess = () => {
-                    open.result.close();
-                    resolve(count.result);
-                  };
-                };
-              }),
-          ),
-        patience,
-      )
-      .toBe(0);
+    await expect.poll(() => keptKeys(page), patience).toEqual([]);
     await technician.context.setOffline(true);
     await page.goto('/bench');
     await page.waitForURL('**/sign-in');

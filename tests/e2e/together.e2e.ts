@@ -145,6 +145,8 @@ describeInBrowser('several browsers together', () => {
     await still.page.clock.install();
     await still.page.goto('/wall');
     await heading(still.page, 'Harbour Lane Traction').waitFor();
+    // The app is kept on the device some seconds after the first screen; a browser prints that it could not fetch it.
+    await still.page.evaluate(async () => void (await navigator.serviceWorker.ready));
     await house.server.stop({ signal: 'SIGKILL', keepData: true });
     await still.page.clock.fastForward('02:20');
     await pause(200);

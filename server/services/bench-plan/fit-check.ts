@@ -1,6 +1,6 @@
 /** Whether a piece of work fits into a free stretch by itself, and why not. */
 import { windowClock } from '@/calc/bench/window-clock';
-import { leastPartMinutes } from '@/shared/contract/work';
+import { leastPartMinutes } from '@/shared/contract/work-terms';
 import { clockText, durationText } from '../charge-words';
 import { without, type Stretch } from './spans';
 

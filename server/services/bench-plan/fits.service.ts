@@ -2,7 +2,8 @@
 import { DateTime } from 'luxon';
 import type { FillPlacement, FillProblem } from '@/calc/bench/bench-types';
 import type { FitDto, FitsDto } from '@/shared/contract/bench-plan';
-import { leastPartMinutes, workWeights, type WorkDto } from '@/shared/contract/work';
+import type { WorkDto } from '@/shared/contract/work';
+import { leastPartMinutes, workWeights } from '@/shared/contract/work-terms';
 import type { Deps, Member } from '../../deps';
 import type { Work } from '../../entities/work';
 import { toInstant } from '../instants';

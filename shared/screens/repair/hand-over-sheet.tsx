@@ -1,6 +1,7 @@
 import { useDraft } from '@/shared/client/drafts';
 import { useHandOverRepair } from '@/shared/client/repairs';
-import { repairStepNames, type RepairDto } from '@/shared/contract/repair';
+import type { RepairDto } from '@/shared/contract/repair';
+import { repairStepNames } from '@/shared/contract/repair-steps';
 import { ConfirmSheet } from '@/shared/ui/primitives/confirm-sheet';
 import { Field } from '@/shared/ui/primitives/field';
 import { SheetFields } from '@/shared/ui/primitives/sheet-fields';

@@ -1,5 +1,6 @@
 import { View } from 'react-native';
-import { alertPath, type AlertDto } from '@/shared/contract/alert';
+import type { AlertDto } from '@/shared/contract/alert';
+import { alertPath } from '@/shared/contract/alert-kinds';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { PressableLink } from '../primitives/pressable-link';

@@ -1,5 +1,6 @@
 /** What alerts say of themselves. Pure. */
-import { alertKindNames, alertPath, type AlertDto, type AlertKind } from '@/shared/contract/alert';
+import type { AlertDto } from '@/shared/contract/alert';
+import { alertKindNames, alertPath, type AlertKind } from '@/shared/contract/alert-kinds';
 import type { ChargeCardDto } from '@/shared/contract/charge';
 import { firstName, waitsForSwap } from '../charge/card-model';
 import type { StageMark } from '../stage/stages';

@@ -1,5 +1,6 @@
 import { View } from 'react-native';
-import { alertKindNames, alertLevels } from '@/shared/contract/alert';
+import { alertLevels } from '@/shared/contract/alert';
+import { alertKindNames } from '@/shared/contract/alert-kinds';
 import type { AlertCause, AlertSettingsDto } from '@/shared/contract/alert-settings';
 import { MoreGroup, MoreRow } from '../more/more-row';
 import { levelTitles, waysText } from './way-words';

@@ -1,5 +1,5 @@
 import { View } from 'react-native';
-import { alertKindNames } from '@/shared/contract/alert';
+import { alertKindNames } from '@/shared/contract/alert-kinds';
 import type { UndeliveredDto } from '@/shared/contract/alert-settings';
 import { ProblemLine } from '../auth/problem-line';
 import { moment } from '../format/clock';

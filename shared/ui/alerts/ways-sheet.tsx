@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import { View } from 'react-native';
-import { alertKindNames } from '@/shared/contract/alert';
+import { alertKindNames } from '@/shared/contract/alert-kinds';
 import { alertWays, type AlertCause, type AlertWay } from '@/shared/contract/alert-settings';
 import { ProblemLine } from '../auth/problem-line';
 import { BottomSheet } from '../primitives/bottom-sheet';

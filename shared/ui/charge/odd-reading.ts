@@ -1,6 +1,6 @@
 /** A reading that the plan does not explain: what was seen, and what to check before it is believed. Pure. */
 import type { ChargeDto } from '@/shared/contract/charge';
-import { readQuantity } from '@/shared/contract/quantity';
+import { readQuantity } from '@/shared/contract/read-quantity';
 import { moment } from '../format/clock';
 import type { LocaleMarks } from '../format/marks';
 import {

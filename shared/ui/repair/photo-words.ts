@@ -1,12 +1,12 @@
 /** What is said of photos. Pure; instants are epoch ms. */
 import {
-  MOST_PHOTO_BYTES,
   photoOf,
   photoSightNames,
   type ModuleConditionDto,
   type PhotoDto,
   type PhotoSight,
 } from '@/shared/contract/photo';
+import { MOST_PHOTO_BYTES } from '@/shared/contract/photo-upload';
 import { moduleFateNames } from '@/shared/contract/repair';
 import { firstName } from '../charge/card-model';
 

@@ -1,5 +1,5 @@
 import { View } from 'react-native';
-import { repairStepNames } from '@/shared/contract/repair';
+import { repairStepNames } from '@/shared/contract/repair-steps';
 import { BenchTime } from '../bench/bench-time';
 import { firstName, isUnderWay, markOf } from '../charge/card-model';
 import { CardRibbon } from '../charge/card-ribbon';

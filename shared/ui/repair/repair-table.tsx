@@ -1,5 +1,6 @@
 import { View } from 'react-native';
-import { repairStepNames, type RepairCardDto } from '@/shared/contract/repair';
+import type { RepairCardDto } from '@/shared/contract/repair';
+import { repairStepNames } from '@/shared/contract/repair-steps';
 import { firstName, markOf, readyOf, type CardClock } from '../charge/card-model';
 import { moment, readyAt, readyBounds } from '../format/clock';
 import { useFormats } from '../format/formats';

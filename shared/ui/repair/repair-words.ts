@@ -1,13 +1,7 @@
 /** What lists and pages say of a repair. Pure; instants are epoch ms. */
 import type { PackReadingDto, SecondSourceDto } from '@/shared/contract/pack-reading';
-import {
-  repairStepNames,
-  repairSteps,
-  type RepairBlock,
-  type RepairCardDto,
-  type RepairDto,
-  type RepairStepDto,
-} from '@/shared/contract/repair';
+import type { RepairBlock, RepairCardDto, RepairDto, RepairStepDto } from '@/shared/contract/repair';
+import { repairStepNames, repairSteps } from '@/shared/contract/repair-steps';
 import { channelsOf, firstName, markOf, stageWords } from '../charge/card-model';
 import { coming } from '../bench/bench-words';
 import { millivolts } from '../format/quantities';

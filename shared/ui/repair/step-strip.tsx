@@ -1,5 +1,6 @@
 import { View } from 'react-native';
-import { repairStepNames, repairSteps, type RepairDto, type RepairStep } from '@/shared/contract/repair';
+import type { RepairDto } from '@/shared/contract/repair';
+import { repairStepNames, repairSteps, type RepairStep } from '@/shared/contract/repair-steps';
 import { channelsOf, markOf } from '../charge/card-model';
 import { useFormats } from '../format/formats';
 import { volts } from '../format/quantities';

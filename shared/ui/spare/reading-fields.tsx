@@ -3,7 +3,7 @@ import { useController, useWatch, type FieldPath, type FieldValues, type UseForm
 import { View } from 'react-native';
 import type { MeterDto } from '@/shared/contract/equipment';
 import { groupVoltsProblem, type TypeWindow } from '@/shared/contract/group-volts';
-import { readQuantity, type QuantityRule } from '@/shared/contract/quantity';
+import { readQuantity, type QuantityRule } from '@/shared/contract/read-quantity';
 import { FieldPair } from '../auth/form-stack';
 import { useFormats } from '../format/formats';
 import { parseNumber, typedDecimals } from '../format/parse';

@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { readQuantity } from '@/shared/contract/quantity';
+import { readQuantity } from '@/shared/contract/read-quantity';
 import { NBSP } from '../format/marks';
 import { BottomSheet } from '../primitives/bottom-sheet';
 import { Button } from '../primitives/button';

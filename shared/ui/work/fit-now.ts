@@ -1,6 +1,6 @@
 /** Whether a piece of work still fits its free stretch, some time after the server reckoned it. Pure; epoch ms. */
 import type { FitDto, FreeStretchDto } from '@/shared/contract/bench-plan';
-import { leastPartMinutes } from '@/shared/contract/work';
+import { leastPartMinutes } from '@/shared/contract/work-terms';
 import { duration } from '../format/duration';
 
 export type FitNow =

@@ -1,6 +1,6 @@
 import { View } from 'react-native';
 import type { FitDto, FreeStretchDto } from '@/shared/contract/bench-plan';
-import { leastPartMinutes } from '@/shared/contract/work';
+import { leastPartMinutes } from '@/shared/contract/work-terms';
 import { NBSP } from '../format/marks';
 import { Button } from '../primitives/button';
 import { Txt } from '../primitives/txt';

@@ -1,7 +1,8 @@
 import { useState } from 'react';
 import { View } from 'react-native';
-import { readQuantity } from '@/shared/contract/quantity';
-import { leastPartMinutes, type TakeWorkInput, type WorkDto } from '@/shared/contract/work';
+import { readQuantity } from '@/shared/contract/read-quantity';
+import type { TakeWorkInput, WorkDto } from '@/shared/contract/work';
+import { leastPartMinutes } from '@/shared/contract/work-terms';
 import { noTimeSentence } from '../charge/said-at';
 import { clock, moment } from '../format/clock';
 import { useFormats } from '../format/formats';

@@ -2,7 +2,7 @@ import { useController, useWatch } from 'react-hook-form';
 import { View } from 'react-native';
 import type { PlaceDto, SkillDto } from '@/shared/contract/staffing';
 import { fieldSentence } from '@/shared/contract/field-sentence';
-import { leastPartMinutes, workPriorities, workPriorityNames, type WorkPriority } from '@/shared/contract/work';
+import { leastPartMinutes, workPriorities, workPriorityNames, type WorkPriority } from '@/shared/contract/work-terms';
 import { daysBetween } from '../format/zone';
 import { BoundCheck, BoundField, BoundSelect, type TypedForm } from '../forms/bound';
 import { DateTimeField } from '../primitives/date-time-field';

@@ -1,6 +1,7 @@
 /** A piece of other work as it is typed. Pure; texts and choices, read by the contract's own schema. */
 import * as z from 'zod/mini';
-import { workPriorityNames, workSchema, type WorkDto, type WorkPriority } from '@/shared/contract/work';
+import { workSchema, type WorkDto } from '@/shared/contract/work';
+import { workPriorityNames, type WorkPriority } from '@/shared/contract/work-terms';
 import { parseTimeOfDay, timeOfDayText } from '../format/parse';
 import { dayOf, instantOfDay, localTime } from '../format/zone';
 import type { DayAndTime } from '../primitives/date-time-field';

@@ -1,5 +1,6 @@
 import { View } from 'react-native';
-import { workPriorityNames, type WorkDto } from '@/shared/contract/work';
+import type { WorkDto } from '@/shared/contract/work';
+import { workPriorityNames } from '@/shared/contract/work-terms';
 import { moment } from '../format/clock';
 import { useFormats } from '../format/formats';
 import { PressableLink } from '../primitives/pressable-link';

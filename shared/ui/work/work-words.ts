@@ -1,6 +1,6 @@
 /** What screens say of a piece of other work. Pure; instants are epoch ms where a clock is asked. */
 import type { StintDto, WorkDto, WorkState } from '@/shared/contract/work';
-import { workPriorityNames } from '@/shared/contract/work';
+import { workPriorityNames } from '@/shared/contract/work-terms';
 import { firstName } from '../charge/card-model';
 import { duration } from '../format/duration';
 import { EN_DASH, NBSP } from '../format/marks';

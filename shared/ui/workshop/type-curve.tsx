@@ -2,7 +2,7 @@ import { lazy, Suspense, type ReactNode } from 'react';
 import { View } from 'react-native';
 import { useWatch } from 'react-hook-form';
 import { chemistryIds, type ModuleTypeDto } from '@/shared/contract/equipment';
-import { readQuantity } from '@/shared/contract/quantity';
+import { readQuantity } from '@/shared/contract/read-quantity';
 import { Txt } from '../primitives/txt';
 import { Surface } from '../theme/surface';
 import { radius } from '../theme/tokens';

@@ -1,5 +1,6 @@
 import type { PackReadingDto, SecondSourceDto } from '@/shared/contract/pack-reading';
-import { repairSteps, type RepairPageDto } from '@/shared/contract/repair';
+import type { RepairPageDto } from '@/shared/contract/repair';
+import { repairSteps } from '@/shared/contract/repair-steps';
 
 const by = { id: 'p1', name: 'Petra Aldwin' };
 const at = '2026-06-09T09:20:00.000Z';

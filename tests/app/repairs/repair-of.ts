@@ -1,5 +1,6 @@
 import type { PackReadingDto } from '@/shared/contract/pack-reading';
-import { repairSteps, type RepairCardDto, type RepairPageDto, type RepairStep } from '@/shared/contract/repair';
+import type { RepairCardDto, RepairPageDto } from '@/shared/contract/repair';
+import { repairSteps, type RepairStep } from '@/shared/contract/repair-steps';
 
 const ines = { id: 'p2', name: 'Ines Marlow' };
 const bookedAt = '2026-06-08T12:50:00.000Z';

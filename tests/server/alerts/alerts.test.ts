@@ -1,5 +1,6 @@
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
-import type { AlertDto, AlertKind } from '@/shared/contract/alert';
+import type { AlertDto } from '@/shared/contract/alert';
+import type { AlertKind } from '@/shared/contract/alert-kinds';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { alertsOf, at, did, hour, key, makeBench, minute, running, seen, type Bench } from '../charges/bench';
 

@@ -1,6 +1,7 @@
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import { Wall } from '@/server/entities/wall';
-import type { AlertDto, AlertKind } from '@/shared/contract/alert';
+import type { AlertDto } from '@/shared/contract/alert';
+import type { AlertKind } from '@/shared/contract/alert-kinds';
 import type { ChargeDto } from '@/shared/contract/charge';
 import { addWall } from '@/tests/support/furnished';
 import { alertsOf, at, did, hour, kept, key, makeBench, minute, running, seen, type Bench } from '../charges/bench';

@@ -306,19 +306,4 @@ describe('seeding', () => {
     expect(await used.deps.dataSource.manager.countBy(Workshop, { id: demoWorkshopId })).toBe(0);
     await used.close();
   });
-
-  it('on a Sunday night makes the same stages, and begins anew where it was cut off', async () => {
-    const sunday = Date.parse('2026-03-29T01:30:00Z');
-    const fresh = await seeded(sunday);
-    const { manager } = fresh.deps.dataSource;
-    const stages = async () =>
-      (await manager.find(Charge, { select: { id: true, stage: true } })).map(({ stage }) => stage).sort();
-    const first = await stages();
-    expect(new Set(first).size).toBe(12);
-    await manager.update(Workshop, { id: demoWorkshopId }, { rev: 0 });
-    await seedDemo(fresh.deps);
-    expect(await stages()).toEqual(first);
-    expect(await manager.count(Workshop)).toBe(1);
-    await fresh.close();
-  }, 300_000);
 });

@@ -55,7 +55,7 @@ test('restored into a fresh folder, every row of every table and every photo are
   const { folder, copy } = await copied();
   const fresh = path.join(root, 'fresh');
   const done = await restore(copy, fresh, at);
-  expect(done).toEqual({ file: databaseFile(fresh), before: null, photos: 1, missing: [] });
+  expect(done).toEqual({ file: databaseFile(fresh), before: null, photos: 1, keys: 0, missing: [] });
   const before = everything(folder);
   expect(Object.keys(before.rows as object).length).toBeGreaterThan(30);
   expect(everything(fresh)).toEqual(before);

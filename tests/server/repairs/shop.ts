@@ -3,7 +3,8 @@
  * 97 and 34 mV under the rest. The healthy ones rest about 3.949 V, a point of the published table.
  */
 import { expect } from 'vitest';
-import type { RepairPageDto, RepairStep } from '@/shared/contract/repair';
+import type { RepairPageDto } from '@/shared/contract/repair';
+import type { RepairStep } from '@/shared/contract/repair-steps';
 import type { Role } from '@/shared/contract/roles';
 import { packForm, packReadingForm, repairForm, secondSourceForm } from '@/tests/support/repaired';
 import { answered, at, did, key, minute, seen, wishOf, type Bench, type Wish } from '../charges/bench';

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { AlertDto, AlertKind } from '@/shared/contract/alert';
+import type { AlertDto } from '@/shared/contract/alert';
+import type { AlertKind } from '@/shared/contract/alert-kinds';
 import { mostUrgent, ringOf } from '@/shared/client/alarm-rings';
 import type { Role } from '@/shared/contract/roles';
 import { contours, vibrationOf, type SoundName } from '@/shared/client/sound-contours';

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { groupVolts, optionalQuantity, quantity, readQuantity, type QuantityRule } from '@/shared/contract/quantity';
+import { groupVolts, optionalQuantity, quantity } from '@/shared/contract/quantity';
+import { readQuantity, type QuantityRule } from '@/shared/contract/read-quantity';
 
 const nb = '\u00a0';
 const amps: QuantityRule = { name: 'Amps', unit: 'A', min: 0, aboveMin: true, max: 2000 };

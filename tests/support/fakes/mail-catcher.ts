@@ -66,7 +66,8 @@ function partsOf(raw: string): Record<string, string> {
   );
 }
 
-export async function startMailCatcher(): Promise<MailCatcher> {
+/** @param taking called when a letter was taken, before that is answered */
+export async function startMailCatcher(taking: () => void = () => {}): Promise<MailCatcher> {
   const caught: CaughtLetter[] = [];
   const refuse: number[] = [];
   const server = new SMTPServer({
@@ -88,10 +89,13 @@ export async function startMailCatcher(): Promise<MailCatcher> {
           headers: split(raw).headers,
           parts: partsOf(raw),
         });
+        taking();
         done();
       });
     },
   });
+  // A sender that is gone in the middle of a letter.
+  server.on('error', () => {});
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
   const { port } = server.server.address() as AddressInfo;
   return {

@@ -41,7 +41,8 @@ export const unregistered: Failure = {
   details: { error: 'DeviceNotRegistered' },
 };
 
-export async function startPhoneService(): Promise<FakePhoneService> {
+/** @param taking called when a message was taken, before that is answered */
+export async function startPhoneService(taking: () => void = () => {}): Promise<FakePhoneService> {
   const taken: PhoneMessage[] = [];
   const tickets: string[] = [];
   const unknown = new Set<string>();
@@ -65,6 +66,7 @@ export async function startPhoneService(): Promise<FakePhoneService> {
       taken.push(message);
       const id = `ticket-${tickets.length + 1}`;
       tickets.push(id);
+      taking();
       return { status: 'ok', id };
     });
   };

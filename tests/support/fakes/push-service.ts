@@ -84,7 +84,8 @@ export function senderOf(header: string, audience: string): { key: string; subje
   return { key, subject: sub };
 }
 
-export async function startPushService(): Promise<FakePushService> {
+/** @param taking called when a message was taken, before that is answered */
+export async function startPushService(taking: () => void = () => {}): Promise<FakePushService> {
   const { chain, key, issuer } = await makeLocalCertificate(['localhost'], new Date());
   const browsers = new Map<string, { ecdh: crypto.ECDH; auth: Buffer }>();
   const taken: TakenPush[] = [];
@@ -114,6 +115,7 @@ export async function startPushService(): Promise<FakePushService> {
           sender,
           subject,
         });
+        taking();
         response.writeHead(answer?.status ?? 201).end();
       } catch (error) {
         response.writeHead(400).end(String(error));
