@@ -1,3 +1,4 @@
+import { useRouter } from 'expo-router';
 import { useState } from 'react';
 import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
@@ -36,6 +37,7 @@ export function ServerPart({ titled }: PartProps) {
 }
 
 function ServerFacts({ titled }: PartProps) {
+  const router = useRouter();
   const now = useNow(30_000);
   const { zone } = useFormats();
   const toast = useToast();
@@ -60,7 +62,7 @@ function ServerFacts({ titled }: PartProps) {
               <Txt bold>{warning}</Txt>
             </CallOut>
           ) : null}
-          <StatusFacts status={status.data} now={now} />
+          <StatusFacts status={status.data} now={now} onUndelivered={() => router.push('/alerts')} />
           <CopiesTable status={status.data} now={now} />
           <ProblemLine text={backUp.error ? sentenceOf(backUp.error) : null} />
           <ProblemLine text={save.error ? sentenceOf(save.error) : null} />

@@ -5,6 +5,7 @@ import { useFormats } from '../format/formats';
 import { NBSP, type LocaleMarks } from '../format/marks';
 import { shortest } from '../format/number';
 import { FactList } from '../primitives/fact-list';
+import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 
@@ -39,7 +40,16 @@ export function copiesWarning({ backups, at }: StatusDto): string | null {
 }
 
 /** How the installation is, in facts. */
-export function StatusFacts({ status, now }: { status: StatusDto; now: number }) {
+export function StatusFacts({
+  status,
+  now,
+  onUndelivered,
+}: {
+  status: StatusDto;
+  now: number;
+  /** Goes to the list of what could not be brought. */
+  onUndelivered: () => void;
+}) {
   const { zone, marks } = useFormats();
   const { backups } = status;
   const [newest] = backups.latest;
@@ -62,15 +72,21 @@ export function StatusFacts({ status, now }: { status: StatusDto; now: number })
           ? [{ name: 'Charges that wait for the server', value: String(status.overdueLooks) }]
           : []),
         { name: 'Alerts on their way out', value: String(status.outbox.waiting) },
-        ...(status.outbox.dead > 0
-          ? [
-              {
-                name: 'Alerts that could not be brought',
-                value: String(status.outbox.dead),
-                note: 'listed under Alerts',
-              },
-            ]
-          : []),
+        {
+          name: 'Alerts that could not be brought',
+          value:
+            status.outbox.dead === 0 ? (
+              '0'
+            ) : (
+              <Link
+                title={`${status.outbox.dead}, see them`}
+                label={`${status.outbox.dead} alerts could not be brought, see them`}
+                href="/alerts"
+                tight
+                onPress={onUndelivered}
+              />
+            ),
+        },
         {
           name: 'Newest copy of the data',
           value: newest ? moment(Date.parse(newest.at), zone, now, marks) : 'none yet',

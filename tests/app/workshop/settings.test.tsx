@@ -133,6 +133,17 @@ describe('the server', () => {
     await waitFor(() => expect(server.sent.filter(({ path }) => path === '/api/status')).toHaveLength(2));
   });
 
+  it('counts what waits and what could not be brought, and leads to the list of the two', async () => {
+    open('manager', 'phone', 'server', {
+      'GET /api/status': () => Response.json({ ...status, outbox: { waiting: 3, dead: 2 } }),
+    });
+    const way = await screen.findByRole('link', { name: '2 alerts could not be brought, see them' });
+    const waiting = screen.getByText('Alerts on their way out').closest('[role="listitem"]');
+    expect(waiting?.textContent).toBe('Alerts on their way out3');
+    fireEvent.click(way);
+    expect(router.push).toHaveBeenCalledWith('/alerts');
+  });
+
   it('says why a copy could not be made, and keeps saying that the last one was not', async () => {
     open('manager', 'phone', 'server', {
       'GET /api/status': () =>

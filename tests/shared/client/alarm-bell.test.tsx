@@ -231,6 +231,23 @@ describe('an alert that is raised', () => {
 });
 
 describe('what its person has set', () => {
+  const ownRests = { id: 'c1', stage: 'resting', person: petra };
+  const boardOf = (charges: unknown[]) => Response.json({ rev: 1, at: iso(start), charges, channels: [] });
+  it.each([
+    ['wanted: the low tone when its rest begins', ['app'], null, ['resting']],
+    ['not wanted by this page: silence', ['e-mail'], null, []],
+    ['in quiet hours: silence', ['app'], { from: '10:30', to: '11:20' }, []],
+  ] as const)('the end of current is %s', async (_how, ways, quiet, sounds) => {
+    const settings = { ways: [{ kind: 'charge-done', level: 'tell', ways }], quiet, alarmsBreakThrough: true };
+    server.answers['GET /api/me/alert-settings'] = () => Response.json(settings);
+    server.answers['GET /api/board'] = () => boardOf([{ ...ownRests, stage: 'tapering' }]);
+    await open();
+    await tap();
+    act(() => void queryClient.setQueryData(['board'], { rev: 2, at: iso(start), charges: [ownRests], channels: [] }));
+    await pass(1000);
+    expect(played).toEqual(tonesOf(...sounds));
+  });
+
   it('in quiet hours nothing rings till they are over, then what is open does, once', async () => {
     // 11:00 on the clock of the workshop, which keeps UTC.
     const settings = { ways: [], quiet: { from: '10:30', to: '11:20' }, alarmsBreakThrough: true };
