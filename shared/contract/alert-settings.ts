@@ -28,6 +28,7 @@ const levelsOf: Record<AlertKind, readonly AlertLevel[]> = {
   'no-current': ['alarm'],
   'too-warm': ['alarm'],
   'over-voltage': ['alarm'],
+  'channel-fault': ['amber', 'alarm'],
   'wall-unseen': ['tell'],
 };
 
