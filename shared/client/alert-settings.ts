@@ -65,5 +65,6 @@ export const useDecideUndelivered = () =>
   useWrite({
     send: ({ id, what }: { id: string; what: 'again' | 'drop' }) =>
       api.post<void>(`/alerts/undelivered/${id}/${what}`, {}),
-    changes: [roots.alerts],
+    // The page of the server counts them.
+    changes: [roots.alerts, roots.status],
   });

@@ -5,7 +5,6 @@ import { useFormats } from '../format/formats';
 import { NBSP, type LocaleMarks } from '../format/marks';
 import { shortest } from '../format/number';
 import { FactList } from '../primitives/fact-list';
-import { Link } from '../primitives/link';
 import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 
@@ -40,16 +39,7 @@ export function copiesWarning({ backups, at }: StatusDto): string | null {
 }
 
 /** How the installation is, in facts. */
-export function StatusFacts({
-  status,
-  now,
-  onUndelivered,
-}: {
-  status: StatusDto;
-  now: number;
-  /** Goes to the list of what could not be brought. */
-  onUndelivered: () => void;
-}) {
+export function StatusFacts({ status, now }: { status: StatusDto; now: number }) {
   const { zone, marks } = useFormats();
   const { backups } = status;
   const [newest] = backups.latest;
@@ -74,18 +64,7 @@ export function StatusFacts({
         { name: 'Alerts on their way out', value: String(status.outbox.waiting) },
         {
           name: 'Alerts that could not be brought',
-          value:
-            status.outbox.dead === 0 ? (
-              '0'
-            ) : (
-              <Link
-                title={`${status.outbox.dead}, see them`}
-                label={`${status.outbox.dead} alerts could not be brought, see them`}
-                href="/alerts"
-                tight
-                onPress={onUndelivered}
-              />
-            ),
+          value: String(status.outbox.dead),
         },
         {
           name: 'Newest copy of the data',
