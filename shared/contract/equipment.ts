@@ -193,9 +193,9 @@ export interface ChannelDto extends Required<Omit<ChannelInput, 'id'>> {
   id: string;
   chargerId: string;
   chargerName: string;
-  /** Charge that holds it now, and from when it is free. */
   /** Null: nobody has said that it is out of order. */
   fault: ChannelFaultDto | null;
+  /** Charge that holds it now, and from when it is free. */
   heldBy: { chargeId: string; title: string; stage: string; freeAt: Instant | null } | null;
 }
 
