@@ -8,6 +8,7 @@ import { queryClient } from '@/shared/client/query-client';
 import { rememberSignedIn } from '@/shared/client/session-state';
 import { contours, vibrationOf, type SoundName } from '@/shared/client/sound-contours';
 import type { AlertDto } from '@/shared/contract/alert';
+import { audioContextThat } from '../../support/audio-context';
 import { fakeServer } from '../../app/workshop/server';
 
 /** The socket's two ends: what the page listens to, and the mouth of the server. */
@@ -74,30 +75,10 @@ function browser() {
   shaken = [];
   told = [];
   for (const context of contexts) context.state = 'suspended';
-  class Context {
-    state = 'suspended';
-    currentTime = 0;
-    destination = {};
-    constructor() {
-      contexts.add(this);
-    }
-    resume = async () => void (this.state = 'running');
-    createGain = () => ({
-      gain: { setValueAtTime() {}, linearRampToValueAtTime() {} },
-      connect: () => ({}),
-    });
-    createOscillator = () => {
-      const frequency = { value: 0 };
-      return {
-        type: '',
-        frequency,
-        connect: (next: object) => next,
-        start: () => played.push(frequency.value),
-        stop() {},
-      };
-    };
-  }
-  vi.stubGlobal('AudioContext', Context);
+  vi.stubGlobal(
+    'AudioContext',
+    audioContextThat((hertz) => played.push(hertz), contexts),
+  );
   vi.stubGlobal(
     'Notification',
     Object.assign(function Notification() {}, { permission: 'granted' }),
@@ -247,6 +228,23 @@ describe('what its person has set', () => {
     await pass(1000);
     expect(played).toEqual(tonesOf(...sounds));
   });
+
+  it.each(['visible', 'hidden'] as const)(
+    'a cause that is not wanted by this page neither rings nor shows a notice, the page being %s',
+    async (state) => {
+      const one = alert({ raisedAt: iso(Date.now()) });
+      const ways = [{ kind: one.kind, level: one.level, ways: ['browser-push', 'e-mail'] }];
+      server.answers['GET /api/me/alert-settings'] = () =>
+        Response.json({ ways, quiet: null, alarmsBreakThrough: true });
+      await open();
+      await tap();
+      look(state);
+      listed = [one];
+      says('alert:raised', one);
+      await pass(20 * minute);
+      expect([played, shaken, told]).toEqual([[], [], []]);
+    },
+  );
 
   it('in quiet hours nothing rings till they are over, then what is open does, once', async () => {
     // 11:00 on the clock of the workshop, which keeps UTC.
