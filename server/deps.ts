@@ -4,6 +4,7 @@ import type { Role } from '@/shared/contract/roles';
 import type { Outbox } from './alerts/outbox';
 import type { Clock } from './clock';
 import type { Config } from './config';
+import type { Outside } from './demo/outside/outside';
 import type { Lifecycle } from './lifecycle';
 import type { LiveHub } from './live/hub';
 import type { Sleeper } from './live/sleeper';
@@ -39,6 +40,8 @@ export interface Deps {
   /** Copies of the data. */
   backups: Backups;
   metrics: Metrics;
+  /** The services outside as the demo has them; null: the real ones. */
+  outside: Outside | null;
 }
 
 /** Who asks, from the session; never from the request's body. */

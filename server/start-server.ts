@@ -9,6 +9,7 @@ import { isEveryAddress, type Config } from './config';
 import { createApp } from './create-app';
 import { assertDurable, makeDataSource } from './data-source';
 import { databaseFile, prepareDataFolder } from './data-files';
+import { startOutside, type Outside } from './demo/outside/outside';
 import { seedDemo } from './demo/seed';
 import type { Deps } from './deps';
 import { lockFolder, type FolderLock } from './folder-lock';
@@ -111,13 +112,16 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
   const lifecycle: Lifecycle = { ready: false, startedAt: clock.now() };
   const passwords = makePasswords();
   const bench = makeBenchSolver();
+  let outside: Outside | null = null;
   try {
     await assertDurable(dataSource);
     const migrations = await migrate(dataSource, config.dataDir, clock.now(), log);
     if (migrations.length > 0) log.info({ migrations }, 'database migrated');
     const wallBoards = makeWallBoards((workshopId, now) => wallBoard({ dataSource }, workshopId, now));
     const hub = makeSocketHub({ config, dataSource, secrets, clock, log, wallBoards });
-    const ways = makeWays(config);
+    if (config.demo && config.mail) log.warn('the demo keeps its letters: BIDEWELL_SMTP_URL is not used');
+    outside = config.demo ? await startOutside(secrets.demoKey, clock) : null;
+    const ways = outside === null ? makeWays(config) : makeWays({ ...config, mail: outside.mail }, outside);
     const dispatcher = makeDispatcher({ dataSource, clock, log, hub, ways, random: Math.random });
     const outbox = { poke: dispatcher.poke, pushKey: ways.pushKey, eMail: ways.eMail !== null };
     const sleeper = makeSleeper({ dataSource, clock, log, hub, outbox });
@@ -140,6 +144,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       limits,
       backups,
       metrics,
+      outside,
     };
     if (config.demo) await seedDemo(deps);
     const app = createApp(deps);
@@ -162,6 +167,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       await quietly(dispatcher.stop(), log, 'the dispatcher did not stop');
       await sending;
       ways.close();
+      await quietly(outside?.close() ?? Promise.resolve(), log, 'the services of the demo did not close');
       // Closes the sockets and the server's port; resolves when the last request under way has ended.
       await quietly(hub.close(), log, 'the sockets did not close');
       clearTimeout(drained);
@@ -174,6 +180,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     };
     return { address: addressOf(config, port), port, deps, stop };
   } catch (error) {
+    await outside?.close();
     await passwords.close();
     await bench.close();
     await dataSource.destroy();

@@ -6,6 +6,7 @@ import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
 import { customersRoutes } from './customers.routes';
 import type { RoutesModule } from './define-route';
+import { demoRoutes } from './demo.routes';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
 import { metricsRoutes } from './metrics.routes';
@@ -43,6 +44,7 @@ export const routesModules: RoutesModule[] = [
   benchPlanRoutes,
   alertsRoutes,
   alertSettingsRoutes,
+  demoRoutes,
   waitsRoutes,
   staffingRoutes,
   workRoutes,

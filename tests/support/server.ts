@@ -263,6 +263,7 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     limits: makeLimits(options.limits),
     backups: makeBackups({ dataDir, everyHours: 0, clock, log: makeLog('silent') }),
     metrics,
+    outside: null,
     ...options.deps,
   };
   const none = { id: '', people: {} as TestWorkshop['people'] };
