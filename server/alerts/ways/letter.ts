@@ -39,5 +39,5 @@ export function letterOf(message: Message, site: string | null): Letter {
     paragraph(escaped(footer), 'font-size:13px;color:#4a5654'),
     '</body></html>',
   ].join('\n');
-  return { subject: `${name}: ${title}`, text: `${[...lines, '', footer].join('\n\n')}\n`, html };
+  return { subject: `${name}: ${title}`, text: `${[...lines, footer].join('\n\n')}\n`, html };
 }

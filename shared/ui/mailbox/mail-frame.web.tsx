@@ -9,5 +9,5 @@ export const MailFrame = ({ html, title }: { html: string; title: string }) =>
     // Of all that a frame may do, only what a link needs: the page it opens is one like any other.
     sandbox: 'allow-popups allow-popups-to-escape-sandbox',
     referrerPolicy: 'no-referrer',
-    style: { width: '100%', height: 420, borderWidth: 0, backgroundColor: '#ffffff' },
+    style: { width: '100%', height: 360, borderWidth: 0, backgroundColor: '#ffffff' },
   });
