@@ -42,11 +42,11 @@ export function MailboxPart({
   const of = (value: SentWay | 'all') => entries.filter((entry) => value === 'all' || entry.way === value);
   const seen = of(way);
   return (
-    <View style={{ rowGap: 16 }}>
+    <View style={{ rowGap: 12 }}>
       <Txt tone="ink2">
-        {`Nothing of the demo leaves this machine: its letters and pushes come here, the newest first. Kept since ${moment(Date.parse(since), zone, now, marks)}.`}
+        {`Nothing of the demo leaves this machine: its letters and pushes come here, the newest first. Kept since the server’s start, ${moment(Date.parse(since), zone, now, marks)}.`}
       </Txt>
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', columnGap: 24, rowGap: 8 }}>
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', columnGap: 24 }}>
         <Link title="Where your alerts go" href="/me/alerts" onPress={() => onGo('/me/alerts')} />
         {hasPhone ? (
           <Txt tone="ink2">You have a phone of the demo.</Txt>
@@ -69,10 +69,15 @@ export function MailboxPart({
           </Txt>
         </View>
       ) : null}
-      <ProblemLine text={phone.error ? sentenceOf(phone.error) : null} />
-      <ProblemLine text={stale === null ? null : `What was sent since could not be read. ${stale}`} />
+      {phone.error ? <ProblemLine text={sentenceOf(phone.error)} /> : null}
+      {stale === null ? null : <ProblemLine text={`What was sent since could not be read. ${stale}`} />}
       {entries.length === 0 ? (
-        <Empty sentence="Nothing was sent yet. Every alarm comes here as a letter, unless its person wants it otherwise." />
+        <Empty sentence="Nothing was sent yet.">
+          <Txt tone="ink2">
+            Every alarm comes here as a letter, unless its person wants it otherwise. Call a channel out of order on the
+            page of a charge that runs, and one is sent.
+          </Txt>
+        </Empty>
       ) : (
         <>
           <SegmentSwitch

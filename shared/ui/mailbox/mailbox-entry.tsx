@@ -8,7 +8,6 @@ import { Link } from '../primitives/link';
 import { SegmentSwitch } from '../primitives/segment-switch';
 import { Txt } from '../primitives/txt';
 import { StageTag } from '../stage/stage-tag';
-import { innerFrame } from '../theme/frame';
 import { makeStyles } from '../theme/make-styles';
 import { radius, stroke } from '../theme/tokens';
 import { MailFrame } from './mail-frame';
@@ -60,6 +59,7 @@ export function MailboxEntry({ entry, now }: { entry: MailboxEntryDto; now: numb
             <SegmentSwitch
               label="Show the letter as"
               value={as}
+              style={styles.switch}
               segments={[
                 { value: 'html', label: 'HTML' },
                 { value: 'text', label: 'Text' },
@@ -83,18 +83,19 @@ export function MailboxEntry({ entry, now }: { entry: MailboxEntryDto; now: numb
   );
 }
 
-const useStyles = makeStyles((theme) => ({
-  entry: { borderTopWidth: 1, borderTopColor: theme.colors.line, paddingTop: 10 },
+const useStyles = makeStyles(({ colors }) => ({
+  entry: { borderTopWidth: 1, borderTopColor: colors.line, paddingTop: 10 },
   head: { flexDirection: 'row', alignItems: 'baseline', columnGap: 12 },
   foot: { flexDirection: 'row', alignItems: 'center', columnGap: 12 },
   words: { flex: 1, minWidth: 0 },
+  switch: { alignSelf: 'flex-start', width: 220 },
   letter: { rowGap: 10, paddingBottom: 16 },
   paper: {
-    backgroundColor: theme.colors.sheet,
+    backgroundColor: colors.sheet,
     borderRadius: radius.control,
+    borderWidth: stroke.control,
+    borderColor: colors.edge,
     overflow: 'hidden',
-    padding: stroke.control,
-    ...innerFrame(theme, stroke.control, theme.colors.edge),
   },
   plain: { padding: 14, overflowWrap: 'anywhere' } as object,
   long: { overflowWrap: 'anywhere' } as object,
