@@ -41,9 +41,24 @@ async function transact<T>(deps: Pick<Deps, 'dataSource'>, work: (manager: Entit
     );
   } catch (error) {
     if (write) write.recorded = recordedBefore;
+    await endLeftOver(deps);
     throw error;
   } finally {
     // What was started within and outlives it (a timer) is outside from now on.
     scope.open = false;
   }
+}
+
+/**
+ * After some errors (a full disk, an error of the disk) SQLite rolls back by itself. TypeORM's own rollback then fails
+ * and it goes on counting the transaction as open: the next ones would be savepoints within none, and once one of them is
+ * rolled back, what comes after it would be committed never.
+ */
+async function endLeftOver({ dataSource }: Pick<Deps, 'dataSource'>): Promise<void> {
+  // The one that all share.
+  const runner = dataSource.createQueryRunner();
+  if (!runner.isTransactionActive) return;
+  // Usually there is none any more.
+  await runner.query('ROLLBACK').catch(() => undefined);
+  Object.assign(runner, { isTransactionActive: false, transactionDepth: 0 });
 }

@@ -8,6 +8,7 @@ import { benchFirstLoad } from './first-load';
 import { benchLive } from './live';
 import { benchPlan } from './plan';
 import { benchStep } from './step';
+import { benchWalls } from './walls';
 
 /** Under a minute together. */
 const quick = {
@@ -19,7 +20,7 @@ const quick = {
   'first-load': benchFirstLoad,
 };
 /** Minutes each, and so only by name. */
-const slow = { calibration: benchCalibration, alarms: benchAlarms };
+const slow = { calibration: benchCalibration, alarms: benchAlarms, walls: benchWalls };
 const benches: Record<string, () => AsyncIterable<string> | Promise<string[]>> = { ...quick, ...slow };
 
 const asked = process.argv.slice(2);

@@ -78,3 +78,19 @@ test('an error in the middle of a write leaves no transaction open: the next is 
   await book().expect(201);
   expect(committed()).toBe(1);
 });
+
+test('after a full disk, a write that is refused half way takes nothing later with it: the next is committed for others to see', async () => {
+  await book().expect(201);
+  const [pages] = await pragma('page_count');
+  await pragma(`max_page_count = ${pages!.page_count}`);
+  for (let n = 0; n < 40; n += 1) await book('x'.repeat(1900));
+  await pragma('max_page_count = 1073741823');
+  const before = committed();
+  await server.deps.dataSource.query(
+    "CREATE TRIGGER stop BEFORE INSERT ON repair_event BEGIN SELECT RAISE(ABORT, 'gone'); END",
+  );
+  await book().expect(500);
+  await server.deps.dataSource.query('DROP TRIGGER stop');
+  await book().expect(201);
+  expect(committed()).toBe(before + 1);
+});
