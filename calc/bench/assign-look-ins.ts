@@ -2,15 +2,23 @@ import type { LookInGiven, LookInPerson, Stretch, WantedLookIn } from './bench-t
 import { CalcInputError } from '../errors';
 import { requireFinite, requirePositive } from '../require';
 
+/** A person with the look-ins that are theirs so far. */
+interface Round {
+  person: LookInPerson;
+  mine: WantedLookIn[];
+}
+
 /**
  * Gives every look-in to somebody: in order of their times, to its owner where they can, otherwise to the one who has
- * the fewest. Who can: is present all through it, has their hands in nothing, and has no other look-in at that time.
+ * the fewest. Who can is present all through it, has their hands in nothing, and has no other look-in at that time.
  *
- * Where all who are there have another look-in at that time, the one among them whose other look-in is over first takes
- * it too, on the same round, after the other; the owner where that makes no difference. Nobody there at its time: nobody gets it (`personId` null), and it still stands in the list.
+ * Where all who are there have another at that time, others' look-ins are handed on to make one of them free. Where that
+ * does not help either, one of them does both on the same round: who has the fewest at that time, the owner before
+ * others. Nobody there: nobody gets it (`personId` null), and it still stands in the list.
  *
  * @param lookInS how long one takes, s
- * @throws CalcInputError for a time that is no number
+ * @returns one line for each that is wanted, in their order
+ * @throws CalcInputError for a time that is no number, or an id that comes twice
  */
 export function assignLookIns(
   wanted: readonly WantedLookIn[],
@@ -24,24 +32,60 @@ export function assignLookIns(
     ids.add(id);
     requireFinite(`wanted[${at}].atS`, atS);
   });
-  const loads = people.map((person) => ({ person, count: 0, busyUntilS: -Infinity }));
-  const given = new Map<string, string | null>();
-  for (const { id, atS, ownerId } of [...wanted].sort((one, other) => one.atS - other.atS)) {
-    const there = loads.filter(({ person }) => canGo(person, atS, lookInS));
-    const idle = there.filter(({ busyUntilS }) => busyUntilS <= atS);
-    const isOwner = (load: (typeof loads)[number]) => Number(load.person.id === ownerId);
-    const [chosen] = idle.length
-      ? idle.sort((one, other) => isOwner(other) - isOwner(one) || one.count - other.count)
-      : there.sort(
-          (one, other) => one.busyUntilS - other.busyUntilS || isOwner(other) - isOwner(one) || one.count - other.count,
-        );
-    given.set(id, chosen?.person.id ?? null);
-    if (!chosen) continue;
-    chosen.count += 1;
-    chosen.busyUntilS = Math.max(chosen.busyUntilS, atS) + lookInS;
+  const rounds = people.map((person): Round => ({ person, mine: [] }));
+  // Of two at the same time the one somebody owns first: the other may go to anybody.
+  const inTurn = [...wanted].sort(
+    (one, other) => one.atS - other.atS || Number(other.ownerId !== null) - Number(one.ownerId !== null),
+  );
+  for (const one of inTurn) {
+    const there = byTurn(one, rounds, lookInS);
+    if (there.length === 0 || handOn(one, there, rounds, lookInS, new Set())) continue;
+    there.sort((a, b) => atOnce(one, a, lookInS).length - atOnce(one, b, lookInS).length);
+    there[0]!.mine.push(one);
   }
-  return wanted.map(({ id }) => ({ lookInId: id, personId: given.get(id) ?? null }));
+  const personOf = new Map(rounds.flatMap(({ person, mine }) => mine.map(({ id }) => [id, person.id] as const)));
+  return wanted.map(({ id }) => ({ lookInId: id, personId: personOf.get(id) ?? null }));
 }
+
+/** Gives it to somebody who is free, or makes somebody free whose others at that time can be handed on; false: nobody. */
+function handOn(
+  one: WantedLookIn,
+  there: readonly Round[],
+  rounds: readonly Round[],
+  lookInS: number,
+  tried: Set<string>,
+): boolean {
+  tried.add(one.id);
+  const free = there.find((round) => atOnce(one, round, lookInS).length === 0);
+  if (free) {
+    free.mine.push(one);
+    return true;
+  }
+  for (const round of there) {
+    const others = atOnce(one, round, lookInS);
+    // With more than one in the way the first could have gone in vain.
+    if (others.length !== 1 || tried.has(others[0]!.id)) continue;
+    const other = others[0]!;
+    round.mine = round.mine.filter((mine) => mine !== other);
+    round.mine.push(one);
+    if (handOn(other, byTurn(other, rounds, lookInS), rounds, lookInS, tried)) return true;
+    round.mine = round.mine.filter((mine) => mine !== one);
+    round.mine.push(other);
+  }
+  return false;
+}
+
+/** Who could do it, were it the only one: the owner first, then who has the fewest. */
+function byTurn({ atS, ownerId }: WantedLookIn, rounds: readonly Round[], lookInS: number): Round[] {
+  const owns = ({ person }: Round) => Number(person.id === ownerId);
+  return rounds
+    .filter(({ person }) => canGo(person, atS, lookInS))
+    .sort((one, other) => owns(other) - owns(one) || one.mine.length - other.mine.length);
+}
+
+/** The look-ins of a person that overlap this one. */
+const atOnce = ({ atS }: WantedLookIn, { mine }: Round, lookInS: number): WantedLookIn[] =>
+  mine.filter((one) => Math.abs(one.atS - atS) < lookInS);
 
 /** Present from its beginning to its end, and hands free. */
 function canGo({ present, busy }: LookInPerson, atS: number, lookInS: number): boolean {

@@ -1,15 +1,15 @@
 import type { BenchProblem } from './bench-types';
 import { benchDecoder, type BenchOrder } from './bench-decode';
-import { benchModel, type BenchModel } from './bench-model';
-import type { ScoredOrder } from './bench-order';
+import { lateModel, type BenchModel } from './bench-model';
+import { benchReach, type ScoredOrder } from './bench-order';
 import { compareScores, SAME_S, type BenchScore } from './bench-score';
 import { searchOrders } from './bench-search';
 import { budgetPart, type SearchBudget } from './search-budget';
 
 /** What a second after the evening costs, in seconds of lateness of a charge of mean weight: step by step more. */
 const PRICES = [4, 6, 9, 14, 20];
-/** How long after the evening charges may be begun, in the mean length of a charge. */
-const OVERTIME = 0.4;
+/** How long after the evening charges may be begun, in the mean length of a charge: between these, another each round. */
+const OVERTIME = [0.2, 0.8] as const;
 /** Of a step's search, and of the last one, which keeps the evenings again. */
 const STEP_NODES = 9_000;
 const LAST_NODES = 6_000;
@@ -17,7 +17,8 @@ const LAST_NODES = 6_000;
 /**
  * The best order found through evenings that give way. A charge that just misses an evening is not begun before the
  * morning, so that no small step leads from one full day to another; here it may be begun a little late at a price,
- * which goes up until nothing is begun late any more. Rounds of this, each from the best so far, until the budget is spent.
+ * which goes up until nothing is begun late any more. Rounds of this until the budget is spent: two on from where the one
+ * before ended, then one from the best so far.
  */
 export function searchThroughEvenings(
   problem: BenchProblem,
@@ -27,14 +28,19 @@ export function searchThroughEvenings(
   random: () => number,
   isBest: (score: BenchScore) => boolean,
 ): ScoredOrder {
-  let best = searchOrders(model, from, budgetPart(budget, STEP_NODES), random, isBest);
+  const reach = benchReach(model);
+  let best = searchOrders(model, reach, from, budgetPart(budget, STEP_NODES), random, isBest);
   const meanWeight = mean(model.weight);
-  const byS = OVERTIME * mean(model.busy);
-  while (!budget.over() && !isBest(best.score)) {
-    let current: BenchOrder = best;
+  const meanBusyS = mean(model.busy);
+  let last = best;
+  for (let round = 0; !budget.over() && !isBest(best.score); round += 1) {
+    let current: BenchOrder = round % 3 === 2 ? best : last;
+    const byS = meanBusyS * (OVERTIME[0] + random() * (OVERTIME[1] - OVERTIME[0]));
+    const dearer = meanWeight * (0.6 + 0.8 * random());
+    const untilLate = lateModel(model, problem, byS);
     for (const price of PRICES) {
-      const late = benchModel(problem, { byS, price: price * meanWeight });
-      const found = searchOrders(late, current, budgetPart(budget, STEP_NODES), random, () => false);
+      const late = { ...untilLate, overPrice: price * dearer };
+      const found = searchOrders(late, reach, current, budgetPart(budget, STEP_NODES), random, () => false);
       const decoder = benchDecoder(late);
       decoder.read(found, null);
       const { starts } = decoder;
@@ -46,8 +52,8 @@ export function searchThroughEvenings(
       kept.read(current, null);
       if (kept.score.lateS <= found.score.lateS + SAME_S || budget.over()) break;
     }
-    const ended = searchOrders(model, current, budgetPart(budget, LAST_NODES), random, isBest);
-    if (compareScores(ended.score, best.score) < 0) best = ended;
+    last = searchOrders(model, reach, current, budgetPart(budget, LAST_NODES), random, isBest);
+    if (compareScores(last.score, best.score) < 0) best = last;
   }
   return best;
 }

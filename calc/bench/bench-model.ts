@@ -32,23 +32,18 @@ export interface BenchModel {
   unplaced: string[];
 }
 
-/**
- * Brings a checked problem down to arrays.
- *
- * @param over lets starts be so much after their stretches, at that price a second; the alternatives stay the same ones
- */
-export function benchModel({ taken, jobs }: BenchProblem, over = { byS: 0, price: 0 }): BenchModel {
-  const kept: { job: number; alternatives: { at: number; one: BenchAlternative; starts: StartWindow[] }[] }[] = [];
+/** Brings a checked problem down to arrays. */
+export function benchModel(problem: BenchProblem): BenchModel {
+  const { taken, jobs } = problem;
+  const kept: { job: number; alternatives: { at: number; one: BenchAlternative }[] }[] = [];
   const unplaced: string[] = [];
   jobs.forEach(({ id, alternatives }, job) => {
-    const usable = alternatives
-      .map((one, at) => ({ at, one, starts: startsOf(one, taken, over.byS) }))
-      .filter(({ starts }) => starts.some(({ isOver }) => !isOver));
+    const usable = alternatives.map((one, at) => ({ at, one })).filter(({ one }) => startsOf(one, taken, 0).length > 0);
     if (usable.length > 0) kept.push({ job, alternatives: usable });
     else unplaced.push(id);
   });
   const all = kept.flatMap(({ alternatives }) => alternatives);
-  return {
+  const model = {
     channels: taken.length,
     source: kept.map(({ job }) => job),
     due: Float64Array.from(kept, ({ job }) => jobs[job]!.dueS ?? Infinity),
@@ -60,12 +55,35 @@ export function benchModel({ taken, jobs }: BenchProblem, over = { byS: 0, price
     guard: Float64Array.from(all, ({ one }) => one.guardS),
     firstHeld: offsets(all.map(({ one }) => one.channels.length)),
     held: Int32Array.from(all.flatMap(({ one }) => one.channels)),
-    firstWindow: offsets(all.map(({ starts }) => starts.length)),
-    windowFrom: Float64Array.from(all.flatMap(({ starts }) => starts.map(({ fromS }) => fromS))),
-    windowTo: Float64Array.from(all.flatMap(({ starts }) => starts.map(({ toS }) => toS))),
-    overPrice: over.price,
-    isOver: Uint8Array.from(all.flatMap(({ starts }) => starts.map(({ isOver }) => Number(isOver)))),
     unplaced,
+  };
+  return { ...model, ...startWindows(model, problem, 0), overPrice: 0 };
+}
+
+/** The model with starts so much after their stretches; what they cost is set by `overPrice`. */
+export const lateModel = (model: BenchModel, problem: BenchProblem, byS: number): BenchModel => ({
+  ...model,
+  ...startWindows(model, problem, byS),
+});
+
+type StartWindows = Pick<BenchModel, 'firstWindow' | 'windowFrom' | 'windowTo' | 'isOver'>;
+
+function startWindows(
+  { source, firstAlternative, alternativeSource }: Omit<BenchModel, keyof StartWindows | 'overPrice'>,
+  { taken, jobs }: BenchProblem,
+  overS: number,
+): StartWindows {
+  const each = source.flatMap((job, at) =>
+    alternativeSource
+      .slice(firstAlternative[at], firstAlternative[at + 1])
+      .map((way) => startsOf(jobs[job]!.alternatives[way]!, taken, overS)),
+  );
+  const all = each.flat();
+  return {
+    firstWindow: offsets(each.map(({ length }) => length)),
+    windowFrom: Float64Array.from(all, ({ fromS }) => fromS),
+    windowTo: Float64Array.from(all, ({ toS }) => toS),
+    isOver: Uint8Array.from(all, ({ isOver }) => Number(isOver)),
   };
 }
 

@@ -22,32 +22,31 @@ export function moveTo(order: Int32Array, at: number, to: number): void {
   order[to] = one;
 }
 
-/** The alternative of a job that holds the channels of another job's; −1: it has none. */
-export function twins({
-  source,
-  busy,
-  firstHeld,
-  held,
-  firstAlternative,
-}: BenchModel): (job: number, of: number) => number {
-  const key = (way: number) => [...held.subarray(firstHeld[way]!, firstHeld[way + 1]!)].sort((a, b) => a - b).join();
-  const keys = Array.from(busy, (_, way) => key(way));
-  const ways = busy.length;
-  const known = new Int32Array(source.length * ways).fill(-1);
-  for (let job = 0; job < source.length; job += 1)
-    for (let of = 0; of < ways; of += 1)
-      for (let way = firstAlternative[job]!; way < firstAlternative[job + 1]!; way += 1)
-        if (keys[way] === keys[of]) known[job * ways + of] = way;
-  return (job, of) => known[job * ways + of]!;
+/** Which jobs and alternatives get in each other's way: the same for all models of one problem. */
+export interface BenchReach {
+  /** Whether two alternatives have a channel in common. */
+  shares: (one: number, other: number) => boolean;
+  /** The alternative of a job that holds the channels of another job's; −1: it has none. */
+  twin: (job: number, of: number) => number;
 }
 
-/** Whether two alternatives have a channel in common. */
-export function shareChannels({ busy, firstHeld, held }: BenchModel): (one: number, other: number) => boolean {
-  const ways = busy.length;
-  const common = new Uint8Array(ways * ways);
-  const channels = Array.from({ length: ways }, (_, way) => held.subarray(firstHeld[way]!, firstHeld[way + 1]!));
-  for (let one = 0; one < ways; one += 1)
-    for (let other = 0; other < ways; other += 1)
-      if (channels[one]!.some((channel) => channels[other]!.includes(channel))) common[one * ways + other] = 1;
-  return (one, other) => common[one * ways + other] === 1;
+/** Looks all pairs of sets of channels up once; there are few of those, however many jobs. */
+export function benchReach({ source, busy, firstHeld, held, firstAlternative }: BenchModel): BenchReach {
+  const keys = Array.from(busy, (_, way) => [...held.subarray(firstHeld[way]!, firstHeld[way + 1]!)].sort().join());
+  const numberOf = new Map([...new Set(keys)].map((key, at) => [key, at]));
+  const setOf = Int32Array.from(keys, (key) => numberOf.get(key)!);
+  const sets = numberOf.size;
+  const channels = [...numberOf.keys()].map((key) => key.split(','));
+  const common = new Uint8Array(sets * sets);
+  for (let one = 0; one < sets; one += 1)
+    for (let other = 0; other < sets; other += 1)
+      if (channels[one]!.some((channel) => channels[other]!.includes(channel))) common[one * sets + other] = 1;
+  const known = new Int32Array(source.length * sets).fill(-1);
+  for (let job = 0; job < source.length; job += 1)
+    for (let way = firstAlternative[job]!; way < firstAlternative[job + 1]!; way += 1)
+      known[job * sets + setOf[way]!] = way;
+  return {
+    shares: (one, other) => common[setOf[one]! * sets + setOf[other]!] === 1,
+    twin: (job, of) => known[job * sets + setOf[of]!]!,
+  };
 }

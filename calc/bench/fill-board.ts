@@ -23,6 +23,8 @@ export interface FillBoard {
   clear: () => void;
   /** The gaps of a window with room for `leastS` of a piece: person and place free, the piece not done elsewhere. */
   look: (window: number, piece: number, leastS: number) => Gaps;
+  /** The longest gap of a window, as far as the person goes: work that goes into it, s. */
+  longest: (window: number) => number;
   /** Lays so much of a piece into a window from an instant that `look` gave; gives its end. */
   lay: (window: number, piece: number, fromS: number, toS: number, workedS: number) => number;
 }
@@ -42,21 +44,23 @@ export function fillBoard({ windows, places, pieces }: FillModel): FillBoard {
   const empty = windows.map(({ fromS, toS, clock }) => clock.between(clock.leave(fromS), toS));
   /** The longest gap of each window, as far as the person goes. */
   const longest = empty.slice();
-  const anyPiece = { fromS: -Infinity, toS: Infinity };
+  const none = line();
 
-  const find = (at: number, { fromS, toS }: Stretch, leastS: number, lines: readonly Line[]): void => {
+  /** Gaps of a window between the stretches of up to three lines: this is where the search spends its time. */
+  const find = (at: number, fromS: number, toS: number, leastS: number, a: Line, b: Line, c: Line): void => {
     const window = windows[at]!;
     const end = Math.min(window.toS, toS);
     gaps.count = 0;
+    let [i, j, k] = [0, 0, 0];
     for (let from = window.clock.leave(Math.max(window.fromS, fromS)); from < end;) {
+      while (i < a.count && a.to[i]! <= from) i += 1;
+      while (j < b.count && b.to[j]! <= from) j += 1;
+      while (k < c.count && c.to[k]! <= from) k += 1;
       // The first thing in the way that is not over by then.
       let [hinderFrom, hinderTo] = [Infinity, Infinity];
-      for (const { from: begins, to: ends, count } of lines)
-        for (let k = 0; k < count; k += 1) {
-          if (ends[k]! <= from) continue;
-          if (begins[k]! < hinderFrom) [hinderFrom, hinderTo] = [begins[k]!, ends[k]!];
-          break;
-        }
+      if (i < a.count) [hinderFrom, hinderTo] = [a.from[i]!, a.to[i]!];
+      if (j < b.count && b.from[j]! < hinderFrom) [hinderFrom, hinderTo] = [b.from[j]!, b.to[j]!];
+      if (k < c.count && c.from[k]! < hinderFrom) [hinderFrom, hinderTo] = [c.from[k]!, c.to[k]!];
       const to = Math.min(end, hinderFrom);
       if (to - from >= leastS) {
         const room = window.clock.between(from, to);
@@ -72,12 +76,8 @@ export function fillBoard({ windows, places, pieces }: FillModel): FillBoard {
     }
   };
 
-  const linesOf = (at: number, piece: number, { place, splittable }: FillPiece): Line[] => {
-    const lines = [inWindow[at]!];
-    if (place >= 0) lines.push(atPlace[place]!);
-    if (splittable) lines.push(ofPiece[piece]!);
-    return lines;
-  };
+  const placeLine = ({ place }: FillPiece): Line => (place >= 0 ? atPlace[place]! : none);
+  const ownLine = (piece: number): Line => (pieces[piece]!.splittable ? ofPiece[piece]! : none);
 
   return {
     clear: () => {
@@ -93,13 +93,19 @@ export function fillBoard({ windows, places, pieces }: FillModel): FillBoard {
     look: (at, piece, leastS) => {
       const least = Math.max(leastS - ROUNDING_S, ROUNDING_S);
       gaps.count = 0;
-      if (longest[at]! >= least) find(at, pieces[piece]!, least, linesOf(at, piece, pieces[piece]!));
+      if (longest[at]! < least) return gaps;
+      const one = pieces[piece]!;
+      find(at, one.fromS, one.toS, least, inWindow[at]!, placeLine(one), ownLine(piece));
       return gaps;
     },
+    longest: (at) => longest[at]!,
     lay: (at, piece, fromS, toS, workedS) => {
       const end = Math.min(toS, windows[at]!.clock.finish(fromS, workedS));
-      for (const one of linesOf(at, piece, pieces[piece]!)) insert(one, fromS, end);
-      find(at, anyPiece, 0, [inWindow[at]!]);
+      const one = pieces[piece]!;
+      insert(inWindow[at]!, fromS, end);
+      if (one.place >= 0) insert(atPlace[one.place]!, fromS, end);
+      if (one.splittable) insert(ofPiece[piece]!, fromS, end);
+      find(at, -Infinity, Infinity, 0, inWindow[at]!, none, none);
       longest[at] = 0;
       for (let k = 0; k < gaps.count; k += 1) longest[at] = Math.max(longest[at]!, gaps.room[k]!);
       return end;

@@ -1,5 +1,5 @@
 import type { Stretch } from './bench-types';
-import { fillBoard } from './fill-board';
+import { fillBoard, type Gaps } from './fill-board';
 import type { FillModel } from './fill-model';
 import { ROUNDING_S } from './window-clock';
 
@@ -22,9 +22,9 @@ export interface FillReader {
   /**
    * The worth of the plan that an order stands for, in weighted minutes: each piece after the other goes into the first
    * room of the window it wishes, or else into the gap it leaves the least of, which it then wishes; a piece that can be
-   * parted fills gap after gap.
+   * parted fills gap after gap. −Infinity as soon as it is clear that the plan is worth less than `leastWorth`.
    */
-  read: (plan: FillOrder) => number;
+  read: (plan: FillOrder, leastWorth?: number) => number;
   /** The parts of the order read last. */
   parts: FillPart[];
 }
@@ -33,8 +33,9 @@ export interface FillReader {
 export function fillReader(model: FillModel): FillReader {
   const board = fillBoard(model);
   const parts: FillPart[] = [];
+  const all = model.pieces.reduce((sum, { perSecond, longS }) => sum + perSecond * longS, 0);
   const best = { window: -1, fromS: 0, toS: 0, roomS: 0 };
-  const take = (window: number, k: number, { from, to, room }: ReturnType<typeof board.look>) => {
+  const take = (window: number, k: number, { from, to, room }: Gaps) => {
     best.window = window;
     best.fromS = from[k]!;
     best.toS = to[k]!;
@@ -67,23 +68,28 @@ export function fillReader(model: FillModel): FillReader {
     return lay(piece, longS);
   };
 
+  /** The better gap for a part: one that takes all that is left, and is then the shorter; otherwise the longer. */
+  const takeForPart = (window: number, gaps: Gaps, left: number) => {
+    for (let k = 0; k < gaps.count; k += 1) {
+      const room = gaps.room[k]!;
+      if (best.roomS >= left ? room >= left && room < best.roomS : room > best.roomS) take(window, k, gaps);
+    }
+  };
+
   /** Fills one gap after the other: the wished window's first, then one that takes all that is left, then the longest. */
   const layParts = (piece: number, wish: Int32Array): number => {
     const { longS, leastS, windows } = model.pieces[piece]!;
+    const wished = wish[piece]!;
     let left = longS;
     while (left > ROUNDING_S && left >= leastS - ROUNDING_S) {
       best.window = -1;
-      let rank = -1;
-      for (const window of windows) {
-        const gaps = board.look(window, piece, leastS);
-        for (let k = 0; k < gaps.count; k += 1) {
-          const room = gaps.room[k]!;
-          const mine = (window === wish[piece] ? 2e9 : 0) + (room >= left ? 1e9 - room : room);
-          if (mine <= rank) continue;
-          rank = mine;
-          take(window, k, gaps);
-        }
-      }
+      best.roomS = 0;
+      if (wished >= 0) takeForPart(wished, board.look(wished, piece, leastS), left);
+      if (best.window < 0)
+        for (const window of windows)
+          // A window whose longest gap is no better than what is found need not be looked at.
+          if (best.roomS < left ? board.longest(window) > best.roomS : best.roomS > left)
+            takeForPart(window, board.look(window, piece, leastS), left);
       if (best.window < 0) break;
       let worked = Math.min(left, best.roomS);
       // A remainder under the least part would never be done, so this part leaves a least part over.
@@ -96,13 +102,17 @@ export function fillReader(model: FillModel): FillReader {
 
   return {
     parts,
-    read: ({ order, wish }) => {
+    read: ({ order, wish }, leastWorth = -Infinity) => {
       board.clear();
       parts.length = 0;
       let worth = 0;
+      let most = all;
       for (const piece of order) {
-        const { splittable, perSecond } = model.pieces[piece]!;
-        worth += perSecond * (splittable ? layParts(piece, wish) : layWhole(piece, wish));
+        const { splittable, perSecond, longS } = model.pieces[piece]!;
+        const workedS = splittable ? layParts(piece, wish) : layWhole(piece, wish);
+        worth += perSecond * workedS;
+        most -= perSecond * (longS - workedS);
+        if (most < leastWorth) return -Infinity;
       }
       return worth;
     },

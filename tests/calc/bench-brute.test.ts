@@ -51,10 +51,12 @@ const judged = (problem: BenchProblem): { plan: Judged; list: Judged; proved: bo
   return { plan: of(plan), list: of(list), proved: plan.proved, bound: plan.boundS };
 };
 
-describe('200 small workshops: the plan is the best of all there are', () => {
-  const seeds = Array.from({ length: 150 }, (_, seed) => ({ seed, jobs: 3 + (seed % 5), channels: 1 + (seed % 3) }));
+describe('small workshops: the plan is the best of all there are', () => {
+  // 7 and 3 have no divisor in common: every size of 1 to 7 charges on 1 to 3 channels comes nine times or ten.
+  const seeds = Array.from({ length: 200 }, (_, seed) => ({ seed, jobs: 1 + (seed % 7), channels: 1 + (seed % 3) }));
 
-  it('150 of up to 7 charges on 3 channels: least left out, least weighted tardiness, least makespan, proved', () => {
+  it('200 of every size of 1 to 7 charges on 1 to 3 channels: least left out, least weighted tardiness, least makespan, proved', () => {
+    expect(new Set(seeds.map(({ jobs, channels }) => `${jobs}/${channels}`)).size).toBe(21);
     for (const { seed, jobs, channels } of seeds) {
       const problem = drawn(seed, jobs, channels, false);
       const { plan, proved, bound } = judged(problem);
@@ -63,7 +65,7 @@ describe('200 small workshops: the plan is the best of all there are', () => {
     }
   });
 
-  it('50 of up to 5 charges, some of which may hold two channels together', () => {
+  it('50 more of up to 5 charges, some of which may hold two channels together', () => {
     for (let seed = 1000; seed < 1050; seed += 1) {
       const problem = drawn(seed, 3 + (seed % 3 === 0 ? 2 : seed % 2), 2 + (seed % 2), true);
       const { plan, proved } = judged(problem);
@@ -73,8 +75,8 @@ describe('200 small workshops: the plan is the best of all there are', () => {
 
   it('the workshops are not all easy: list scheduling misses the best in a third of them, tardiness in a fifth', () => {
     const all = seeds.map(({ seed, jobs, channels }) => judged(drawn(seed, jobs, channels, false)));
-    expect(all.filter(({ plan, list }) => list.some((value, at) => value !== plan[at])).length).toBeGreaterThan(50);
-    expect(all.filter(({ plan, list }) => list[0] === plan[0] && list[1] > plan[1]).length).toBeGreaterThan(30);
+    expect(all.filter(({ plan, list }) => list.some((value, at) => value !== plan[at])).length).toBeGreaterThan(66);
+    expect(all.filter(({ plan, list }) => list[0] === plan[0] && list[1] > plan[1]).length).toBeGreaterThan(40);
     expect(all.filter(({ plan }) => plan[1] > 0).length).toBeGreaterThan(50);
     expect(all.filter(({ plan }) => plan[0] > 0).length).toBeGreaterThan(3);
   });
