@@ -74,3 +74,14 @@ export { intersect, merge, subtract } from './bench/stretches';
 // Waits: the simulator, the replay of what happened, and what the figures say.
 export * from './waits/waits-types';
 export { simulateQueue } from './waits/simulate-queue';
+export { replayCharges } from './waits/replay-charges';
+export { channelsNeeded, type ChannelsNeeded } from './waits/channels-needed';
+export { erlangC, erlangChannels } from './waits/erlang-c';
+export { shelfVolts, type ShelfInput, type ShelfVoltage } from './waits/shelf-volts';
+export {
+  FEWEST_AVERAGED,
+  mannWhitney,
+  medianDifference,
+  plannedAgainstActual,
+  type PlannedActual,
+} from './waits/compare-periods';
