@@ -11,6 +11,7 @@ import { ChargeEvent } from './charge-event';
 import { ChargeReading } from './charge-reading';
 import { Charger } from './charger';
 import { CheckAnswer } from './check-answer';
+import { FinishedWait } from './finished-wait';
 import { FittedSpare } from './fitted-spare';
 import { IdempotencyKey } from './idempotency-key';
 import { Invitation } from './invitation';
@@ -62,6 +63,7 @@ export const entities = [
   Charge,
   SpareCapacity,
   ChannelHold,
+  FinishedWait,
   RunStretch,
   ChargeReading,
   CheckAnswer,

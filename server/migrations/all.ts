@@ -14,6 +14,7 @@ import { PackBalance1765800000000 } from './1765800000000-pack-balance';
 import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
 import { BenchPlan1765900000000 } from './1765900000000-bench-plan';
 import { AlertDelivery1767000000000 } from './1767000000000-alert-delivery';
+import { FinishedWaits1767100000000 } from './1767100000000-finished-waits';
 
 export const migrations = [
   Initial1764600000000,
@@ -31,4 +32,5 @@ export const migrations = [
   FittedSpare1765810000000,
   BenchPlan1765900000000,
   AlertDelivery1767000000000,
+  FinishedWaits1767100000000,
 ];

@@ -34,6 +34,7 @@ const comeAndGo = {
     ...['repair_event', 'advised_item', 'photo', 'fitted_spare'],
     ...['place', 'skill', 'staffing', 'work', 'work_stint', 'bench_change'],
     ...['alert_turn', 'outbox_entry', 'push_device', 'alert_setting'],
+    'finished_wait',
   ],
   columns: [
     ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],
