@@ -77,6 +77,7 @@ export { simulateQueue } from './waits/simulate-queue';
 export { replayCharges } from './waits/replay-charges';
 export { channelsNeeded, type ChannelsNeeded } from './waits/channels-needed';
 export { erlangC, erlangChannels } from './waits/erlang-c';
+export { openBetween } from './waits/open-time';
 export { shelfVolts, type ShelfInput, type ShelfVoltage } from './waits/shelf-volts';
 export {
   FEWEST_AVERAGED,

@@ -26,7 +26,10 @@ import { makeLimits } from './services/limits';
 import { makeMetrics } from './services/metrics';
 import { makePasswords } from './services/passwords';
 import { loadSecrets } from './services/secrets';
+import { inTransaction } from './services/unit-of-work';
 import { version } from './services/version';
+import { fillWaits } from './services/waits/fill-waits';
+import { makeWaitsSolver } from './services/waits/waits-solver';
 import { sweepPhotos } from './sweep-photos';
 
 /** Requests under way get this long to end when the server stops, ms. */
@@ -109,6 +112,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
   const lifecycle: Lifecycle = { ready: false, startedAt: clock.now() };
   const passwords = makePasswords();
   const bench = makeBenchSolver();
+  const waits = makeWaitsSolver();
   try {
     await assertDurable(dataSource);
     const migrations = await migrate(dataSource, config.dataDir, clock.now(), log);
@@ -132,12 +136,15 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       lifecycle,
       passwords,
       bench,
+      waits,
       secrets,
       limits,
       backups,
       metrics,
     };
     if (config.demo) await seedDemo(deps);
+    const filled = await inTransaction(deps, fillWaits);
+    if (filled > 0) log.info({ charges: filled }, 'waits of finished charges written down');
     const app = createApp(deps);
     const server = makeHttpServer(config, app);
     hub.attach(server);
@@ -163,6 +170,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       clearTimeout(drained);
       await quietly(passwords.close(), log, 'the hashing threads did not end');
       await quietly(bench.close(), log, 'the thread of the bench plan did not end');
+      await quietly(waits.close(), log, 'the thread of the waits did not end');
       await quietly(dataSource.query('PRAGMA wal_checkpoint(TRUNCATE)'), log, 'the write-ahead log was not emptied');
       await quietly(dataSource.destroy(), log, 'the database did not close');
       metrics.close();
@@ -172,6 +180,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
   } catch (error) {
     await passwords.close();
     await bench.close();
+    await waits.close();
     await dataSource.destroy();
     throw error;
   }

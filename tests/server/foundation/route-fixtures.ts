@@ -310,6 +310,9 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/board': technician(),
   'GET /api/waits': foreman(),
   'GET /api/waits.csv': foreman(),
+  'GET /api/waits/groups': foreman(() => ({ query: 'by=way' })),
+  'GET /api/waits/charges': foreman(),
+  'GET /api/waits/compare': foreman(() => ({ query: 'compareFrom=2026-04-01&compareTo=2026-04-30' })),
 
   ...benchFixtures,
   ...alertFixtures,

@@ -2,6 +2,7 @@
 import type { EntityManager } from 'typeorm';
 import { ChannelHold } from '@/server/entities/channel-hold';
 import { Charge } from '@/server/entities/charge';
+import { fillWaits } from '@/server/services/waits/fill-waits';
 
 const MINUTE = 60_000;
 
@@ -100,4 +101,5 @@ export async function writePast(manager: EntityManager, past: readonly PastCharg
   );
   for (let from = 0; from < rows.length; from += 200) await manager.insert(Charge, rows.slice(from, from + 200));
   for (let from = 0; from < holds.length; from += 200) await manager.insert(ChannelHold, holds.slice(from, from + 200));
+  await fillWaits(manager);
 }

@@ -1,6 +1,6 @@
 import { DateTime } from 'luxon';
 import type { WaitsQuery } from '@/shared/contract/waits';
-import { invalid } from '../errors/domain-error';
+import { invalid } from '../../errors/domain-error';
 
 /** Whole weeks before the present one that are shown when nobody asks for others. */
 const DEFAULT_WEEKS = 8;
