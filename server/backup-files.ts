@@ -29,6 +29,25 @@ export function listBackups(folder: string): BackupFile[] {
     .sort((one, other) => other.at - one.at);
 }
 
+const CHUNK_BYTES = 1 << 20;
+
+/** Whether two files are the same, byte for byte. Read piece by piece: a database may be larger than the memory. */
+export function holdTheSame(one: string, other: string): boolean {
+  if (fs.statSync(one).size !== fs.statSync(other).size) return false;
+  const files = [fs.openSync(one, 'r'), fs.openSync(other, 'r')];
+  const [left, right] = [Buffer.alloc(CHUNK_BYTES), Buffer.alloc(CHUNK_BYTES)];
+  try {
+    for (;;) {
+      const read = fs.readSync(files[0]!, left, 0, CHUNK_BYTES, null);
+      const alike = fs.readSync(files[1]!, right, 0, CHUNK_BYTES, null) === read;
+      if (!alike || !left.subarray(0, read).equals(right.subarray(0, read))) return false;
+      if (read === 0) return true;
+    }
+  } finally {
+    for (const file of files) fs.closeSync(file);
+  }
+}
+
 const HOUR = 3600_000;
 const DAY = 24 * HOUR;
 /** Every copy for a day, then one a day for two weeks, then one a week for a quarter of a year. A setting of ours. */

@@ -18,10 +18,16 @@ export function backUpKeys(dataDir: string, copy: string): void {
   const there = keyFiles(dataDir).filter((file) => fs.existsSync(file));
   if (there.length === 0) return;
   const keys = Object.fromEntries(there.map((file) => [path.basename(file), fs.readFileSync(file, 'utf8')]));
-  const unfinished = `${keysBeside(copy)}.unfinished`;
-  fs.writeFileSync(unfinished, `${JSON.stringify(keys)}\n`, { mode: 0o600 });
+  writeOwn(keysBeside(copy), `${JSON.stringify(keys)}\n`);
+}
+
+/** Writes a file that only its owner reads, aside first: it is there whole or not at all. */
+function writeOwn(file: string, text: string): void {
+  const unfinished = `${file}.unfinished`;
+  fs.writeFileSync(unfinished, text, { mode: 0o600 });
+  // One that was left there keeps the mode it had.
   fs.chmodSync(unfinished, 0o600);
-  fs.renameSync(unfinished, keysBeside(copy));
+  fs.renameSync(unfinished, file);
 }
 
 /**
@@ -50,10 +56,6 @@ export function bringKeys(keys: Record<string, string>, dataDir: string): number
     const text = keys[path.basename(file)];
     return text === undefined ? [] : [{ file, text }];
   });
-  for (const { file, text } of known) {
-    fs.writeFileSync(`${file}.restored`, text, { mode: 0o600 });
-    fs.chmodSync(`${file}.restored`, 0o600);
-    fs.renameSync(`${file}.restored`, file);
-  }
+  for (const { file, text } of known) writeOwn(file, text);
   return known.length;
 }

@@ -26,7 +26,8 @@ interface PhotoRow {
 
 /**
  * Brings a copy back into a data folder: the copy is checked, what is there now is copied into the backups, then the
- * database is exchanged in one step, and the keys and photos that belong to it are laid beside it. Until that step nothing is changed.
+ * database is exchanged in one step, and the keys and photos that belong to it are laid beside it. Until that step
+ * nothing is changed.
  * @param copy file made by a backup, with its `.keys` and its `photos` beside it
  * @param now instant in the name of the copy of what is there now
  * @throws Error where a server works on the folder, or the copy is damaged or of a later version

@@ -6,6 +6,7 @@ import path from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { promisify } from 'node:util';
 import zlib from 'node:zlib';
+import { bundleServer } from './bundle.mjs';
 import { ensureInstalled } from './install.mjs';
 import { writeServiceWorker } from './web/app-shell.mjs';
 import { fromRoot, runOrExit, say, stampOf } from './tools.mjs';
@@ -83,38 +84,13 @@ async function buildWeb() {
   fs.renameSync(fresh, fromRoot('dist'));
 }
 
-/** The worker threads' entry points: each file of server/workers is one. */
-function workers() {
-  const folder = fromRoot('server/workers');
-  if (!fs.existsSync(folder)) return [];
-  return fs.readdirSync(folder).filter((name) => name.endsWith('.ts'));
-}
-
 async function buildServer() {
   const stamp = stampOf(serverInputs);
   const stampFile = fromRoot('dist-server/.stamp');
   if (readOr(stampFile, '') === stamp) return;
   say('bundling the server');
-  const { build } = await import('esbuild');
   fs.rmSync(fromRoot('dist-server'), { recursive: true, force: true });
-  await build({
-    absWorkingDir: fromRoot('.'),
-    entryPoints: [
-      { in: 'server/index.ts', out: 'main' },
-      ...workers().map((name) => ({ in: `server/workers/${name}`, out: `workers/${path.basename(name, '.ts')}` })),
-    ],
-    outdir: 'dist-server',
-    bundle: true,
-    platform: 'node',
-    target: 'node20',
-    format: 'esm',
-    packages: 'external',
-    // Entities and migrations are known to TypeORM by their class names.
-    keepNames: true,
-    sourcemap: true,
-    tsconfig: 'server/tsconfig.json',
-    logLevel: 'warning',
-  });
+  await bundleServer('dist-server');
   fs.writeFileSync(stampFile, stamp);
 }
 

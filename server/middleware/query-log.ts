@@ -7,8 +7,7 @@ export const SLOW_QUERY_MS = 100;
 
 /**
  * What TypeORM has to say, and services that hold nothing but its manager, in the log of the process; an Error with its
- * stack and cause. The parameters of a statement are left out: they are what people
- * typed.
+ * stack and cause. The parameters of a statement are left out: they are what people typed.
  */
 export const queryLog = (log: Logger, metrics: Metrics): TypeOrmLogger => ({
   logQuery: () => {},

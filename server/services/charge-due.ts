@@ -1,7 +1,7 @@
 /** When something happens next to a charge, and since when it is late. */
 import { latestStartAt, silenceOf } from './charge-causes';
 import type { ChargeFile } from './charge-file';
-import { chargeNow, instantOf } from './charge-clock';
+import { chargeNow, instantOf, secondsOf } from './charge-clock';
 import { dueLookIn, nextLookIn, nextMissedAt } from './charge-look-ins';
 import { isRunning, isUnderWay, swapWait } from './charge-stages';
 
@@ -79,8 +79,10 @@ function runInstants(file: ChargeFile, at: number): (number | null)[] {
     if (swap !== null) instants.push(...TOLD_AGAIN_MS.map((wait) => swap.since + wait));
     else if (reckoning) {
       instants.push(charge.taperAt);
-      for (const end of [instantOf(charge, reckoning.stepEndS), instantOf(charge, reckoning.currentEndS)])
-        instants.push(end > at ? end : at + SOON_MS);
+      // By seconds: as an instant what ends now lies a digit ahead, again and again while a reading says that it flows.
+      const nowS = secondsOf(charge, at);
+      for (const endS of [reckoning.stepEndS, reckoning.currentEndS])
+        instants.push(endS > nowS ? instantOf(charge, endS) : at + SOON_MS);
     }
     instants.push(at + REFRESH_MS, silenceOf(file)?.dueAt ?? null);
   }

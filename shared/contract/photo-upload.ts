@@ -1,4 +1,5 @@
 /** How a picture is sent. */
+
 /** Most bytes of an uploaded picture: what the largest phone cameras make of one. */
 export const MOST_PHOTO_BYTES = 16 * 1024 * 1024;
 

@@ -2,6 +2,7 @@
  * Numbers as people type them: comma or point, spaces, a pasted unit. One reader for forms and the API,
  * so that both refuse the same things with the same sentence. Free of schemas: the bench reads without them.
  */
+
 export interface QuantityRule {
   /** What it is, as the sentence begins: 'Target', 'Amps'. */
   name: string;

@@ -1,4 +1,5 @@
 /** Words and settings of other work, free of its schemas: the bench needs no more of it. */
+
 export const workPriorities = ['low', 'usual', 'high', 'urgent'] as const;
 export type WorkPriority = (typeof workPriorities)[number];
 

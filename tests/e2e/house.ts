@@ -60,15 +60,17 @@ export async function openHouse({ demo = true, ...options }: LaunchOptions = {})
   const server = await launch({ ...options, demo, dataDir });
   try {
     const browser = await openBrowser();
-    return {
+    const house: House = {
       server,
       browser,
       close: async () => {
         await browser.close();
-        await server.stop();
+        // The one that runs now: a test may have ended the first and started another over its data.
+        await house.server.stop();
         if (dataDir) fs.rmSync(dataDir, { recursive: true, force: true });
       },
     };
+    return house;
   } catch (error) {
     await server.stop({ signal: 'SIGKILL' });
     throw error;

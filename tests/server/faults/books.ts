@@ -32,15 +32,19 @@ export interface Books {
   damage: unknown[];
 }
 
-/** What a charge goes through, and what may come after it. */
+/**
+ * What a charge goes through, and what may come after it. `back`: current off said again at a later time while the check
+ * is due sends the charge back to its rest, and the check falls due a second time.
+ */
 const follows: Record<string, string[]> = {
   planned: ['started'],
   started: ['held', 'tapering', 'resting'],
   tapering: ['held', 'resting'],
   held: ['resumed'],
   resumed: ['held', 'tapering', 'resting'],
-  resting: ['check-due'],
-  'check-due': ['ready'],
+  resting: ['check-due', 'back'],
+  'check-due': ['ready', 'back'],
+  back: ['held', 'tapering', 'resting', 'check-due'],
   ready: ['fitted', 'shelved'],
   fitted: [],
   shelved: [],
@@ -66,10 +70,10 @@ function reading<T>(dataDir: string, read: (all: (sql: string) => Record<string,
   }
 }
 
-/** How many transitions all charges have behind them, their plans not counted. */
+/** How many transitions all charges have behind them; plans and ways back are not counted. */
 export const transitionsIn = (dataDir: string): number =>
   reading(dataDir, (all) => {
-    const kinds = Object.keys(follows).filter((kind) => kind !== 'planned');
+    const kinds = Object.keys(follows).filter((kind) => kind !== 'planned' && kind !== 'back');
     const [row] = all(
       `SELECT count(*) AS n FROM charge_event WHERE kind IN (${kinds.map((kind) => `'${kind}'`).join()})`,
     );

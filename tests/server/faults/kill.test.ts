@@ -10,7 +10,7 @@ import { seededRandom } from '@/calc/index';
 import { databaseFile } from '@/server/data-files';
 import { alertCauses } from '@/shared/contract/alert-settings';
 import type { StatusDto } from '@/shared/contract/status';
-import { bundleServer } from '@/tests/support/bundled-server';
+import { bundleServer } from '@/server/cli/bundle.mjs';
 import { startMailCatcher, type MailCatcher } from '@/tests/support/fakes/mail-catcher';
 import { startPhoneService, type FakePhoneService } from '@/tests/support/fakes/phone-service';
 import { startPushService, type FakePushService } from '@/tests/support/fakes/push-service';

@@ -5,20 +5,15 @@ import os from 'node:os';
 import path from 'node:path';
 import Database from 'better-sqlite3';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { listBackups } from '@/server/backup-files';
 import { databaseFile } from '@/server/data-files';
-import { bundleServer } from '@/tests/support/bundled-server';
+import { bundleServer } from '@/server/cli/bundle.mjs';
+import { firstWorkshop } from '@/tests/support/first-workshop';
 
 const root = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-process-'));
 afterAll(() => fs.rmSync(root, { recursive: true, force: true }));
 let folders = 0;
 const newFolder = () => path.join(root, String(++folders));
-const workshop = {
-  workshopName: 'Quay Street Cells',
-  zone: 'Europe/Lisbon',
-  name: 'Alva Reis',
-  email: 'alva@example.com',
-  password: 'seven lamps over the slipway',
-};
 const mode = (file: string) => (fs.statSync(file).mode & 0o777).toString(8);
 
 const bundle = path.join(process.cwd(), 'node_modules/.cache/bidewell-process-test');
@@ -64,7 +59,7 @@ function spawnServer(folder: string, env: Record<string, string> = {}) {
 /** Begins to send a body and stops half way, when the server has read the head and asked for more. */
 async function halfARequest(address: string) {
   const { hostname, port } = new URL(address);
-  const body = JSON.stringify(workshop);
+  const body = JSON.stringify(firstWorkshop);
   const headers = {
     'content-type': 'application/json',
     'content-length': Buffer.byteLength(body),
@@ -155,10 +150,9 @@ describe('the process', () => {
     const server = spawnServer(folder, { BIDEWELL_BACKUP_HOURS: '1' });
     await server.said(/"address":"([^"]+)"/);
     await server.said(/(data copied)/);
-    // Its keys lie beside it.
-    const names = fs.readdirSync(path.join(folder, 'backups')).filter((name) => name.endsWith('.sqlite'));
-    expect(names).toHaveLength(1);
-    expect(names[0]).toMatch(/^bidewell-clock-.*\.sqlite$/);
+    const copies = listBackups(path.join(folder, 'backups'));
+    expect(copies).toHaveLength(1);
+    expect(path.basename(copies[0]!.file)).toMatch(/^bidewell-clock-.*\.sqlite$/);
     server.child.kill('SIGTERM');
     expect(await server.exit).toBe(0);
   });

@@ -9,6 +9,7 @@ import { DataSource, type MigrationInterface, type QueryRunner } from 'typeorm';
 import { afterAll, afterEach, describe, expect, it } from 'vitest';
 import type { Config } from '@/server/config';
 import { makeDataSource } from '@/server/data-source';
+import { listBackups } from '@/server/backup-files';
 import { databaseFile } from '@/server/data-files';
 import { makeLog } from '@/server/middleware/request-log';
 import { migrate } from '@/server/migrate';
@@ -17,6 +18,7 @@ import { makeLocalCertificate } from '@/server/cli/certificate';
 import { startServer, type RunningServer } from '@/server/start-server';
 import { cookiesOf } from '@/tests/support/cookies';
 import { testConfig } from '@/tests/support/server';
+import { firstWorkshop } from '@/tests/support/first-workshop';
 
 const root = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-start-'));
 afterAll(() => fs.rmSync(root, { recursive: true, force: true }));
@@ -38,13 +40,6 @@ const start = async (dataDir: string, change?: Partial<Config>) => {
 afterEach(async () => {
   for (const server of running.splice(0)) await server.stop();
 });
-const workshop = {
-  workshopName: 'Quay Street Cells',
-  zone: 'Europe/Lisbon',
-  name: 'Alva Reis',
-  email: 'alva@example.com',
-  password: 'seven lamps over the slipway',
-};
 const mode = (file: string) => (fs.statSync(file).mode & 0o777).toString(8);
 
 describe('the first start', () => {
@@ -72,12 +67,12 @@ describe('the first start', () => {
   it('serves a person from real bcrypt to a session, which the next start still knows', async () => {
     const folder = newFolder();
     const first = await start(folder);
-    const created = await request(first.address).post('/api/workshops').send(workshop);
+    const created = await request(first.address).post('/api/workshops').send(firstWorkshop);
     expect(created.status).toBe(201);
     const cookie = Object.entries(cookiesOf(created))
       .map(([name, { value }]) => `${name}=${value}`)
       .join('; ');
-    const { email, password } = workshop;
+    const { email, password } = firstWorkshop;
     expect((await request(first.address).post('/api/session').send({ email, password })).status).toBe(200);
     expect((await request(first.address).post('/api/session').send({ email, password: 'not this' })).status).toBe(401);
     await first.stop();
@@ -110,7 +105,7 @@ describe('over https', () => {
     const { chain, key, issuer } = await makeLocalCertificate(['localhost', '127.0.0.1'], new Date());
     const server = await start(newFolder(), { tls: { cert: chain, key } });
     expect(server.address).toMatch(/^https:\/\/127\.0\.0\.1:/);
-    const created = await request(server.address).post('/api/workshops').ca(issuer).send(workshop);
+    const created = await request(server.address).post('/api/workshops').ca(issuer).send(firstWorkshop);
     expect(created.status).toBe(201);
     const cookies = cookiesOf(created);
     expect(Object.keys(cookies).sort()).toEqual([
@@ -148,7 +143,7 @@ describe('a migration', () => {
   it('of a database that holds something begins with a copy of it', async () => {
     const folder = newFolder();
     const first = await start(folder);
-    await request(first.address).post('/api/workshops').send(workshop);
+    await request(first.address).post('/api/workshops').send(firstWorkshop);
     await first.stop();
     running.pop();
     expect(fs.existsSync(path.join(folder, 'backups'))).toBe(false);
@@ -160,10 +155,9 @@ describe('a migration', () => {
     expect(await migrate(later, folder, Date.now(), log)).toEqual(['Later9999999999999']);
     expect(await migrate(later, folder, Date.now(), log)).toEqual([]);
     await later.destroy();
-    // Its keys lie beside it.
-    const backups = fs.readdirSync(path.join(folder, 'backups')).filter((name) => name.endsWith('.sqlite'));
+    const backups = listBackups(path.join(folder, 'backups'));
     expect(backups).toHaveLength(1);
-    const copy = new Database(path.join(folder, 'backups', backups[0] ?? ''), { readonly: true });
+    const copy = new Database(backups[0]!.file, { readonly: true });
     expect(copy.prepare('SELECT email FROM person').all()).toEqual([{ email: 'alva@example.com' }]);
     expect(copy.prepare("SELECT name FROM sqlite_master WHERE name = 'later'").all()).toEqual([]);
     copy.close();

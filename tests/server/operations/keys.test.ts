@@ -15,15 +15,9 @@ import { makeBackups } from '@/server/services/backups';
 import { startServer, type RunningServer } from '@/server/start-server';
 import { cookiesOf } from '@/tests/support/cookies';
 import { makeTestClock, testConfig } from '@/tests/support/server';
+import { firstWorkshop } from '@/tests/support/first-workshop';
 
 const at = new Date('2026-06-09T08:15:30Z');
-const workshop = {
-  workshopName: 'Quay Street Cells',
-  zone: 'Europe/Lisbon',
-  name: 'Alva Reis',
-  email: 'alva@example.com',
-  password: 'seven lamps over the slipway',
-};
 let root: string;
 let running: RunningServer | null = null;
 beforeEach(() => (root = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-keys-'))));
@@ -45,7 +39,7 @@ async function stop(): Promise<void> {
 /** A workshop with a session, the key a browser subscribes with, and a copy of it elsewhere. */
 async function lived(folder: string) {
   const address = await start(folder);
-  const created = await request(address).post('/api/workshops').send(workshop).expect(201);
+  const created = await request(address).post('/api/workshops').send(firstWorkshop).expect(201);
   const cookie = Object.entries(cookiesOf(created))
     .map(([name, { value }]) => `${name}=${value}`)
     .join('; ');
@@ -63,7 +57,7 @@ test('restored into a fresh folder on another machine, a session goes on and bro
   expect(fs.statSync(path.join(fresh, 'push.key')).mode & 0o777).toBe(0o600);
   const address = await start(fresh);
   const session = await request(address).get('/api/session').set('Cookie', cookie).expect(200);
-  expect(session.body.person.email).toBe(workshop.email);
+  expect(session.body.person.email).toBe(firstWorkshop.email);
   expect((await request(address).get('/api/push-key').set('Cookie', cookie)).body.key).toBe(key);
 });
 

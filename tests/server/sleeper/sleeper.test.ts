@@ -218,6 +218,25 @@ describe('the loop', () => {
     expect(await bench.sleeper.runDue()).toBe(0);
   });
 
+  test('looks once a minute, not without a pause, at a charge whose current still flows when it was to have ended', async () => {
+    const charge = await running(bench, { spareId: await bench.spare('S-1') });
+    await bench.live(at(charge.currentEndAt) - bench.server.clock.now() - 30_000, 5 * minute);
+    await bench.live(at((await seen(bench, charge.id)).currentEndAt) - bench.server.clock.now() - 1);
+    await did(bench, charge, 'readings', { amps: '10' });
+    const looks: number[] = [];
+    for (let look = 0; look < 12; look += 1) {
+      const row = await bench.server.deps.dataSource.manager.findOneByOrFail(Charge, { id: charge.id });
+      if (row.stage !== 'charging') break;
+      bench.server.clock.set(row.nextDueAt!);
+      looks.push(row.nextDueAt!);
+      await bench.sleeper.runDue();
+    }
+    const pauses = looks.slice(1).map((look, place) => look - looks[place]!);
+    expect(pauses).toHaveLength(11);
+    // The first look is at the end that was reckoned, a moment after the reading.
+    for (const pause of pauses.slice(1)) expect(pause).toBe(minute);
+  });
+
   test('does nothing where nothing is due', async () => {
     await running(bench, { spareId: await bench.spare('S-1') });
     const told = bench.server.hub.told.length;
