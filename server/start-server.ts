@@ -30,6 +30,7 @@ import { inTransaction } from './services/unit-of-work';
 import { version } from './services/version';
 import { fillWaits } from './services/waits/fill-waits';
 import { makeWaitsSolver } from './services/waits/waits-solver';
+import { makeWeeklyDigests } from './services/waits/weekly-digests';
 import { sweepPhotos } from './sweep-photos';
 
 /** Requests under way get this long to end when the server stops, ms. */
@@ -120,6 +121,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     const hub = makeSocketHub({ config, dataSource, secrets, clock, log });
     const ways = makeWays(config);
     const dispatcher = makeDispatcher({ dataSource, clock, log, hub, ways, random: Math.random });
+    const digests = makeWeeklyDigests({ dataSource, clock, log, config, secrets, ways, random: Math.random });
     const outbox = { poke: dispatcher.poke, pushKey: ways.pushKey, eMail: ways.eMail !== null };
     const sleeper = makeSleeper({ dataSource, clock, log, hub, outbox });
     const limits = makeLimits();
@@ -154,6 +156,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     const port = await listenOn(server, config);
     // What waits goes out beside the start: a mail server that does not answer must not keep the workshop waiting.
     const sending = quietly(dispatcher.start(), log, 'the dispatcher did not start');
+    const telling = quietly(digests.start(), log, 'the weekly digest did not start');
     lifecycle.ready = true;
     watchProcess(deps);
     backups.start();
@@ -163,7 +166,8 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       await quietly(backups.stop(), log, 'the copying did not stop');
       await quietly(sleeper.stop(), log, 'the sleeper did not stop');
       await quietly(dispatcher.stop(), log, 'the dispatcher did not stop');
-      await sending;
+      await quietly(digests.stop(), log, 'the weekly digest did not stop');
+      await Promise.all([sending, telling]);
       ways.close();
       // Closes the sockets and the server's port; resolves when the last request under way has ended.
       await quietly(hub.close(), log, 'the sockets did not close');

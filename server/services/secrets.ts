@@ -10,6 +10,8 @@ export interface Secrets {
   refreshKey: Buffer;
   /** Marks the cookie of a device that has signed in. */
   deviceKey: Buffer;
+  /** Marks the link by which a person ends the weekly digest. */
+  digestKey: Buffer;
 }
 
 /** Derives the keys from the secret. */
@@ -19,6 +21,7 @@ export function secretsFrom(secret: Buffer): Secrets {
     accessKey: createSecretKey(derive('access token')),
     refreshKey: derive('refresh token'),
     deviceKey: derive('known device'),
+    digestKey: derive('weekly digest'),
   };
 }
 

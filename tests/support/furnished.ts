@@ -6,6 +6,7 @@ import { SpareCapacity } from '@/server/entities/spare-capacity';
 import { OutboxEntry } from '@/server/entities/outbox-entry';
 import { PushDevice } from '@/server/entities/push-device';
 import { makeSleeper } from '@/server/live/sleeper-loop';
+import { digestToken } from '@/server/services/waits/digest-letter';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { ChargerDto, MeterDto, ModuleTypeDto, ResistorDto } from '@/shared/contract/equipment';
 import type { OneUseLinkDto } from '@/shared/contract/people';
@@ -52,6 +53,8 @@ export interface Furnished {
   bench: Benched;
   /** A capacity of the spare on the shelf that waits for an answer. */
   capacityId: string;
+  /** Ends the manager's weekly digest. */
+  digestToken: string;
   /** A calculation over the waits. */
   replayId: string;
   invitationId: string;
@@ -292,6 +295,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     repairs,
     bench,
     replayId: replay.id,
+    digestToken: digestToken(server.deps.secrets, workshop.people.manager.id),
     invitationId: invitation?.id ?? '',
     invitationToken: new URL(url).searchParams.get('token') ?? '',
     ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),

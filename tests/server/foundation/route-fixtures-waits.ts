@@ -1,7 +1,8 @@
-/** The routes of the waits and of their replays. */
+/** The routes of the waits, of their replays, and of the weekly digest. */
 import type { RouteFixture } from './route-fixtures';
 
 const foreman = (fit?: RouteFixture['fit']): RouteFixture => ({ who: 'foreman', fit });
+const manager = (fit?: RouteFixture['fit']): RouteFixture => ({ who: 'manager', fit });
 
 export const waitsFixtures: Record<string, RouteFixture> = {
   'GET /api/waits': foreman(),
@@ -10,6 +11,10 @@ export const waitsFixtures: Record<string, RouteFixture> = {
   'GET /api/waits/charges': foreman(),
   'GET /api/waits/compare': foreman(() => ({ query: 'compareFrom=2026-04-01&compareTo=2026-04-30' })),
 
+  'GET /api/me/weekly-digest': manager(),
+  'PATCH /api/me/weekly-digest': manager(() => ({ body: { on: true } })),
+  'GET /api/digest/stop': { who: 'anyone', fit: (f) => ({ query: `token=${f.digestToken}` }) },
+  'POST /api/digest/stop': { who: 'anyone', fit: (f) => ({ query: `token=${f.digestToken}` }) },
   'POST /api/waits/what-if': foreman((f) => ({
     body: { questions: [{ moreLikeChannelId: f.channelId }], together: false },
   })),
