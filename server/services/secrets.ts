@@ -12,6 +12,8 @@ export interface Secrets {
   deviceKey: Buffer;
   /** Marks the link by which a person ends the weekly digest. */
   digestKey: Buffer;
+  /** From this the browsers of the demo's push service have their keys. */
+  demoKey: Buffer;
 }
 
 /** Derives the keys from the secret. */
@@ -22,6 +24,7 @@ export function secretsFrom(secret: Buffer): Secrets {
     refreshKey: derive('refresh token'),
     deviceKey: derive('known device'),
     digestKey: derive('weekly digest'),
+    demoKey: derive('browsers of the demo'),
   };
 }
 

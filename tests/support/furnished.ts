@@ -13,6 +13,7 @@ import type { OneUseLinkDto } from '@/shared/contract/people';
 import type { PlanDto } from '@/shared/contract/plan';
 import type { SpareDto } from '@/shared/contract/spare';
 import type { WallCodeDto, WallDto } from '@/shared/contract/wall';
+import { addBrokenChannel } from './broken-channel';
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from './forms';
 import { addBench, type Benched } from './benched';
 import { addRepairs, type Repaired } from './repaired';
@@ -29,6 +30,8 @@ export interface Furnished {
   resistorId: string;
   chargerId: string;
   channelId: string;
+  /** Out of order, of a charger that nothing is planned on. */
+  faultyChannelId: string;
   /** A spare in a charge that runs, with a reading, for the technician. */
   chargedSpareId: string;
   chargeId: string;
@@ -75,6 +78,7 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.resistorId,
   furnished.chargerId,
   furnished.channelId,
+  furnished.faultyChannelId,
   furnished.chargedSpareId,
   furnished.chargeId,
   furnished.readingId,
@@ -283,6 +287,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     name,
     workshop,
     ...ids,
+    faultyChannelId: await addBrokenChannel(technician, manager, name, ids.meterId),
     restedRev: rev,
     chargeId,
     chargeRev: charge.rev,

@@ -156,6 +156,8 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { ...charger(f), channels: [channelForm({ id: f.channelId, name: 'New 1' })] },
   })),
   'DELETE /api/chargers/:id': manager((f) => ({ params: { id: f.chargerId } })),
+  'POST /api/channels/:id/fault': technician((f) => ({ params: { id: f.channelId }, body: { seen: 'No current' } })),
+  'POST /api/channels/:id/works': foreman((f) => ({ params: { id: f.faultyChannelId } })),
   'GET /api/resistors': technician(),
   'POST /api/resistors': manager(() => ({ body: resistor })),
   'PATCH /api/resistors/:id': manager((f) => ({ params: { id: f.resistorId }, body: resistor })),
