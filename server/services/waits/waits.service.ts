@@ -87,7 +87,7 @@ async function weeksOf(
   return mondays.map((monday) => {
     const row = rows.get(monday);
     const { charges, ...figures } = row === undefined ? noSpread : spreadDto(row);
-    return { monday, week: weekNumberOf(monday, zone), charges, ...figures };
+    return { monday, week: weekNumberOf(monday), charges, ...figures };
   });
 }
 

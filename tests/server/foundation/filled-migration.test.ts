@@ -47,6 +47,7 @@ const comeAndGo = {
     ...['unattended_charges', 'look_in_visit_minutes', 'fit_minutes', 'usual_arrival_volts'],
     ...['pass_on_tell_minutes', 'pass_on_amber_minutes', 'pass_on_alarm_minutes'],
     ...['wall_id', 'for_role', 'pass_due_at', 'turn'],
+    ...['fault_at', 'fault_seen', 'fault_by_id'],
   ],
 };
 

@@ -3,18 +3,18 @@
  * 1 June ten of 180 min, all of them on working days; the letter comes on Monday 8 June at 07:00 by Berlin's clock.
  */
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import fs from 'node:fs';
 import { seededRandom } from '@/calc/index';
 import { makeWays, type Ways } from '@/server/alerts/ways/all';
 import { Person } from '@/server/entities/person';
 import { WeeklyDigest } from '@/server/entities/weekly-digest';
+import { startMailCatcher, type MailCatcher } from '@/server/demo/outside/mail-catcher';
 import type { DueLoop } from '@/server/live/due-loop';
 import { makeWeeklyDigests } from '@/server/services/waits/weekly-digests';
 import type { WeeklyDigestDto } from '@/shared/contract/weekly-digest';
-import { startMailCatcher, type MailCatcher } from '../../support/fakes/mail-catcher';
 import { makeTestServer, type TestServer } from '../../support/server';
 import { stock } from '../../support/stocked';
 import { writePast } from './history';
-import fs from 'node:fs';
 
 const MINUTE = 60_000;
 const site = 'https://bench.example.com';
@@ -74,7 +74,7 @@ describe('the weekly digest', () => {
     expect(letter!.to).toEqual(['manager@own.example.com']);
     expect(letter!.headers.subject).toBe('Waits of 1 June to 7 June');
     const text = letter!.parts['text/plain']!.replaceAll('\u00a0', ' ');
-    const facts = text.split('\n').filter((line) => line.startsWith('– '));
+    const facts = text.split(/\r?\n/).filter((line) => line.startsWith('– '));
     expect(facts).toEqual([
       // Charging: 180 − 35 = 145 min, after 25: the greatest change of all.
       '– Charging, the middle of it took 2 h 25, 2 h 00 more than in the week before.',
