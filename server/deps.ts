@@ -14,6 +14,7 @@ import type { Limits } from './services/limits';
 import type { Metrics } from './services/metrics';
 import type { Passwords } from './services/passwords';
 import type { Secrets } from './services/secrets';
+import type { WaitsSolver } from './services/waits/waits-solver';
 import type { WallBoards } from './services/wall-boards';
 
 /** What every service gets. Made once in create-app. */
@@ -33,6 +34,8 @@ export interface Deps {
   passwords: Passwords;
   /** Reckons for the bench plan off the event loop. */
   bench: BenchSolver;
+  /** Reckons over the history of waits off the event loop. */
+  waits: WaitsSolver;
   /** Keys of this installation. */
   secrets: Secrets;
   /** Throttles, kept in memory. */

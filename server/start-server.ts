@@ -27,7 +27,11 @@ import { makeLimits } from './services/limits';
 import { makeMetrics } from './services/metrics';
 import { makePasswords } from './services/passwords';
 import { loadSecrets } from './services/secrets';
+import { inTransaction } from './services/unit-of-work';
 import { version } from './services/version';
+import { fillWaits } from './services/waits/fill-waits';
+import { makeWaitsSolver } from './services/waits/waits-solver';
+import { makeWeeklyDigests } from './services/waits/weekly-digests';
 import { wallBoard } from './services/board.service';
 import { makeWallBoards } from './services/wall-boards';
 import { sweepPhotos } from './sweep-photos';
@@ -112,6 +116,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
   const lifecycle: Lifecycle = { ready: false, startedAt: clock.now() };
   const passwords = makePasswords();
   const bench = makeBenchSolver();
+  const waits = makeWaitsSolver();
   let outside: Outside | null = null;
   try {
     await assertDurable(dataSource);
@@ -123,6 +128,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     outside = config.demo ? await startOutside(secrets.demoKey, clock) : null;
     const ways = outside === null ? makeWays(config) : makeWays({ ...config, mail: outside.mail }, outside);
     const dispatcher = makeDispatcher({ dataSource, clock, log, hub, ways, random: Math.random });
+    const digests = makeWeeklyDigests({ dataSource, clock, log, config, secrets, ways, random: Math.random });
     const outbox = { poke: dispatcher.poke, pushKey: ways.pushKey, eMail: ways.eMail !== null };
     const sleeper = makeSleeper({ dataSource, clock, log, hub, outbox });
     const limits = makeLimits();
@@ -140,6 +146,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       lifecycle,
       passwords,
       bench,
+      waits,
       secrets,
       limits,
       backups,
@@ -147,6 +154,8 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       outside,
     };
     if (config.demo) await seedDemo(deps);
+    const filled = await inTransaction(deps, fillWaits);
+    if (filled > 0) log.info({ charges: filled }, 'waits of finished charges written down');
     const app = createApp(deps);
     const server = makeHttpServer(config, app);
     hub.attach(server);
@@ -156,6 +165,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     const port = await listenOn(server, config);
     // What waits goes out beside the start: a mail server that does not answer must not keep the workshop waiting.
     const sending = quietly(dispatcher.start(), log, 'the dispatcher did not start');
+    const telling = quietly(digests.start(), log, 'the weekly digest did not start');
     lifecycle.ready = true;
     watchProcess(deps);
     backups.start();
@@ -165,7 +175,8 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       await quietly(backups.stop(), log, 'the copying did not stop');
       await quietly(sleeper.stop(), log, 'the sleeper did not stop');
       await quietly(dispatcher.stop(), log, 'the dispatcher did not stop');
-      await sending;
+      await quietly(digests.stop(), log, 'the weekly digest did not stop');
+      await Promise.all([sending, telling]);
       ways.close();
       await quietly(outside?.close() ?? Promise.resolve(), log, 'the services of the demo did not close');
       // Closes the sockets and the server's port; resolves when the last request under way has ended.
@@ -173,6 +184,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       clearTimeout(drained);
       await quietly(passwords.close(), log, 'the hashing threads did not end');
       await quietly(bench.close(), log, 'the thread of the bench plan did not end');
+      await quietly(waits.close(), log, 'the thread of the waits did not end');
       await quietly(dataSource.query('PRAGMA wal_checkpoint(TRUNCATE)'), log, 'the write-ahead log was not emptied');
       await quietly(dataSource.destroy(), log, 'the database did not close');
       metrics.close();
@@ -183,6 +195,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     await outside?.close();
     await passwords.close();
     await bench.close();
+    await waits.close();
     await dataSource.destroy();
     throw error;
   }

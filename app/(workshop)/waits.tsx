@@ -7,7 +7,7 @@ import { useNow } from '@/shared/client/clock';
 import { useModuleTypes } from '@/shared/client/module-types';
 import { usePeople } from '@/shared/client/people';
 import { useCan } from '@/shared/client/session';
-import { downloadWaits, useWaits } from '@/shared/client/waits';
+import { downloadWaits, useWaitCharges, useWaitGroups, useWaits } from '@/shared/client/waits';
 import { can } from '@/shared/contract/roles';
 import { clock, moment } from '@/shared/ui/format/clock';
 import { durationTable } from '@/shared/ui/format/duration';
@@ -71,6 +71,8 @@ function WaitsPage() {
     ...(params.charger ? { chargerId: params.charger } : {}),
   };
   const waits = useWaits(query);
+  const byCharger = useWaitGroups('charger', query).data?.groups ?? [];
+  const rows = useWaitCharges(query).data?.rows ?? [];
   const types = useModuleTypes().data ?? [];
   const chargers = useChargers().data ?? [];
   const [csvProblem, setCsvProblem] = useState<string | null>(null);
@@ -150,14 +152,14 @@ function WaitsPage() {
                 <Rule gap={0} />
                 <StageRibbon stages={data.stages} />
                 <GroupTable label="Waits by module type" first="Module type" groups={data.byModuleType} />
-                <GroupTable label="Waits by charger" first="Charger" groups={data.byCharger} />
+                <GroupTable label="Waits by charger" first="Charger" groups={byCharger} />
               </Suspense>
               <Txt kind="heading" heading={2}>
                 The charges behind it
               </Txt>
               <Table
                 label="Charges"
-                rows={data.rows.slice(0, 100)}
+                rows={rows}
                 rowKey={(row) => row.chargeId}
                 rowLabel={(row) => `Open ${row.title}`}
                 onOpen={(row) => router.push(`/charges/${row.chargeId}` as Href)}

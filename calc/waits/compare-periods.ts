@@ -1,5 +1,6 @@
 import { CalcInputError } from '../errors';
 import { quantile, quantileOfSorted } from '../statistics/quantile';
+import { inverseNormal } from '../statistics/inverse-normal';
 import { normalCdf } from '../statistics/normal-cdf';
 import { seededRandom } from '../statistics/seeded-random';
 
@@ -67,7 +68,16 @@ export function mannWhitney(first: readonly number[], second: readonly number[])
   return { u, p: 2 * (1 - normalCdf(z)) };
 }
 
-/** Difference of the medians, second − first, with its 95 % bootstrap interval of 1,000 draws (percentile interval). */
+/** Above so many values a resampled median is drawn by its own distribution. */
+const MOST_RESAMPLED = 1000;
+
+/**
+ * Difference of the medians, second − first, with its 95 % bootstrap interval of 1,000 draws (percentile interval).
+ *
+ * The median of n values drawn with replacement stands where the median of n uniform numbers stands, which is
+ * Beta((n+1)/2, (n+1)/2) distributed: of more than 1,000 values a draw takes it from the normal distribution of the same
+ * mean ½ and variance 1/(4(n+2)), in place of n values.
+ */
 export function medianDifference(
   first: readonly number[],
   second: readonly number[],
@@ -75,18 +85,28 @@ export function medianDifference(
 ): { value: number; low: number; high: number } {
   requireBoth(first, second);
   const random = seededRandom(seed);
-  const again = (of: readonly number[]) =>
-    quantile(
-      of.map(() => of[Math.floor(random() * of.length)]!),
-      0.5,
-    );
-  const draws = Float64Array.from({ length: 1000 }, () => again(second) - again(first)).sort();
+  const drawer = (of: readonly number[]) => {
+    if (of.length <= MOST_RESAMPLED)
+      return () =>
+        quantile(
+          of.map(() => of[Math.floor(random() * of.length)]!),
+          0.5,
+        );
+    const sorted = Float64Array.from(of).sort();
+    const sd = 1 / Math.sqrt(4 * (of.length + 2));
+    return () => quantileOfSorted(sorted, Math.min(1, Math.max(0, 0.5 + sd * inverseNormal(inside(random())))));
+  };
+  const [again, before] = [drawer(second), drawer(first)];
+  const draws = Float64Array.from({ length: 1000 }, () => again() - before()).sort();
   return {
     value: quantile(second, 0.5) - quantile(first, 0.5),
     low: quantileOfSorted(draws, 0.025),
     high: quantileOfSorted(draws, 0.975),
   };
 }
+
+/** A number of [0, 1) off the end at which the inverse of the normal distribution is infinite. */
+const inside = (share: number): number => Math.max(1e-12, share);
 
 function requireBoth(first: readonly number[], second: readonly number[]): void {
   if (first.length === 0) throw new CalcInputError('first', [], 'a list of one or more');

@@ -9,6 +9,7 @@ import { RestCheck } from '../entities/rest-check';
 import { RunStretch } from '../entities/run-stretch';
 import { Spare } from '../entities/spare';
 import { SpareReading } from '../entities/spare-reading';
+import { fillWaits } from '../services/waits/fill-waits';
 import { makeNoise } from './noise';
 import { makePast, type PastCharge } from './past-charges';
 import { pastEvents } from './past-events';
@@ -73,6 +74,7 @@ export async function writePast(manager: EntityManager, shop: PastShop, now: num
     ChargeEvent,
     past.flatMap((one) => pastEvents(one, shop.workshop.zone, wentOnAs.get(one.key) ?? null)),
   );
+  await fillWaits(manager);
   return past.length;
 }
 

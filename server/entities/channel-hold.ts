@@ -7,6 +7,7 @@ import { Workshop } from './workshop';
 /** A channel held by a step of a charge. Two running steps on one channel cannot exist. */
 @Entity({ name: 'channel_hold' })
 @Index('ix_channel_hold_charge', ['workshopId', 'chargeId'])
+@Index('ix_channel_hold_time', ['workshopId', 'state', 'toAt', 'fromAt', 'channelId'])
 @Index('uq_channel_running', ['channelId'], { unique: true, where: "state = 'running'" })
 @Check('ck_channel_hold_state', "state IN ('reserved','running','released')")
 export class ChannelHold {

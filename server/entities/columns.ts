@@ -7,7 +7,7 @@ const instantTransformer: ValueTransformer = {
   from: (value: string | number | null) => (value === null ? null : Number(value)),
 };
 
-export const instantColumn = (name: string): ColumnOptions => ({
+export const instantColumn = (name: string): ColumnOptions & { nullable?: false } => ({
   type: 'bigint',
   name,
   transformer: instantTransformer,

@@ -15,6 +15,8 @@ import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
 import { BenchPlan1765900000000 } from './1765900000000-bench-plan';
 import { AlertDelivery1767000000000 } from './1767000000000-alert-delivery';
 import { ChannelFault1767100000000 } from './1767100000000-channel-fault';
+import { FinishedWaits1767110000000 } from './1767110000000-finished-waits';
+import { WeeklyDigest1767200000000 } from './1767200000000-weekly-digest';
 
 export const migrations = [
   Initial1764600000000,
@@ -33,4 +35,6 @@ export const migrations = [
   BenchPlan1765900000000,
   AlertDelivery1767000000000,
   ChannelFault1767100000000,
+  FinishedWaits1767110000000,
+  WeeklyDigest1767200000000,
 ];

@@ -7,6 +7,7 @@ import { chargesRoutes } from './charges.routes';
 import { customersRoutes } from './customers.routes';
 import type { RoutesModule } from './define-route';
 import { demoRoutes } from './demo.routes';
+import { digestRoutes } from './digest.routes';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
 import { metricsRoutes } from './metrics.routes';
@@ -46,6 +47,7 @@ export const routesModules: RoutesModule[] = [
   alertSettingsRoutes,
   demoRoutes,
   waitsRoutes,
+  digestRoutes,
   staffingRoutes,
   workRoutes,
 ];

@@ -27,6 +27,7 @@ import { announceRepair } from './repair-write';
 import { followCharge, type RepairRev } from './repair-charges';
 import { refusingTaken } from './unique-taken';
 import { inTransaction } from './unit-of-work';
+import { recordWaits } from './waits/record-waits';
 import { lastChange, staleCharge, toldBy } from './who-changed';
 
 export interface ChargeWrite {
@@ -155,6 +156,8 @@ export async function settle(
     [...notes, ...happened].map((note, place) => eventOf(charge, note, now + place)),
   );
   const repair = await followCharge(manager, file, now, [...notes, ...happened]);
+  // That of a charge with a repair follows the repair's wait.
+  if (repair === null) await recordWaits(manager, file.workshop, [charge]);
   const boardRev = await raiseBoardRev(manager, charge.workshopId);
   const stock = charge.stage !== storedStage;
   return {

@@ -18,6 +18,7 @@ import { loadRepairFile, type RepairFile } from './repair-file';
 import { syncWait } from './repair-waits';
 import { refusingTaken } from './unique-taken';
 import { inTransaction } from './unit-of-work';
+import { recordWaits } from './waits/record-waits';
 
 export interface RepairWrite {
   manager: EntityManager;
@@ -89,6 +90,11 @@ export async function settleRepair(
   const { repair } = file;
   const { workshopId } = repair;
   await syncWait(manager, file, now);
+  await recordWaits(
+    manager,
+    file.workshop,
+    file.charges.map(({ charge }) => charge),
+  );
   repair.rev += 1;
   repair.searchText = searchText(file);
   await updateRepair(manager, workshopId, repair.id, { rev: repair.rev, searchText: repair.searchText });

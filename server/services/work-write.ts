@@ -13,6 +13,7 @@ import { announceBench } from './announce';
 import { clockText } from './charge-words';
 import { refusingTaken } from './unique-taken';
 import { inTransaction } from './unit-of-work';
+import { recordWaitsWithin } from './waits/record-waits';
 import { oneWorkDto } from './work-dto';
 import { loadWorkFile, type WorkFile } from './work-file';
 import { workName } from './work-words';
@@ -70,10 +71,21 @@ export async function changeOneWork(
 }
 
 /** Writes the work's own columns as one more revision. */
-export async function saveWork(manager: EntityManager, { work }: Pick<WorkFile, 'work'>): Promise<void> {
+export async function saveWork(manager: EntityManager, { work, stints }: WorkFile): Promise<void> {
   work.rev += 1;
   const { id, workshopId, createdAt: _made, ...columns } = work;
   await updateWork(manager, workshopId, id, columns);
+  const worked = lastWorked(stints);
+  if (worked !== null) await recordWaitsWithin(manager, workshopId, worked);
+}
+
+/** The stretch in which an act on the work may have changed what somebody was at: what goes on, or what ended last. */
+function lastWorked(stints: WorkFile['stints']): { from: number; to: number } | null {
+  const begun = stints.filter(({ begunAt }) => begunAt !== null);
+  const endOf = ({ endedAt }: (typeof stints)[number]): number => endedAt ?? Number.MAX_SAFE_INTEGER;
+  const until = Math.max(...begun.map(endOf));
+  const last = begun.filter((stint) => endOf(stint) === until);
+  return last.length === 0 ? null : { from: Math.min(...last.map(({ begunAt }) => begunAt!)), to: until };
 }
 
 function overText(work: WorkFile['work'], zone: string, now: number): string {

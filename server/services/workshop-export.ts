@@ -14,13 +14,19 @@ import { csvBegin, csvLines, type CsvCell } from './csv';
 /** Rows between two looks at other requests. */
 const ROWS_AT_ONCE = 500;
 
-/** Of sessions, pairings, devices and sendings: keys that open something, and nothing that anybody has measured or done. */
+/**
+ * Of sessions, pairings, devices and sendings: keys that open something, and nothing that anybody has measured or done. The
+ * rows of the statistics follow from those of charges, repairs and work, and digests from them.
+ */
 const leftOutTables: ReadonlySet<string> = new Set([
   'session',
   'invitation',
   'wall_code',
   'idempotency_key',
   'push_device',
+  'finished_wait',
+  'weekly_digest',
+  'digest_stop',
 ]);
 /** Columns that open something in whatever table. */
 const leftOutColumn = /password|token|secret|successor|p256dh|^auth$|_key$/;

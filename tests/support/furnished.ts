@@ -6,6 +6,7 @@ import { SpareCapacity } from '@/server/entities/spare-capacity';
 import { OutboxEntry } from '@/server/entities/outbox-entry';
 import { PushDevice } from '@/server/entities/push-device';
 import { makeSleeper } from '@/server/live/sleeper-loop';
+import { digestToken } from '@/server/services/waits/digest-letter';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { ChargerDto, MeterDto, ModuleTypeDto, ResistorDto } from '@/shared/contract/equipment';
 import type { OneUseLinkDto } from '@/shared/contract/people';
@@ -55,6 +56,10 @@ export interface Furnished {
   bench: Benched;
   /** A capacity of the spare on the shelf that waits for an answer. */
   capacityId: string;
+  /** Ends the manager's weekly digest. */
+  digestToken: string;
+  /** A calculation over the waits. */
+  replayId: string;
   invitationId: string;
   invitationToken: string;
   wallId: string;
@@ -87,6 +92,7 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.reservedSpareId,
   ...Object.values(furnished.repairs).filter((id) => typeof id === 'string'),
   ...Object.values(furnished.bench).filter((id) => typeof id === 'string'),
+  furnished.replayId,
   furnished.invitationId,
   furnished.wallId,
 ];
@@ -275,6 +281,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     manager.post('/api/invitations', { email: `nell@${name}.example.com`, role: 'technician' }),
     201,
   );
+  const replay = await bodyOf<{ id: string }>(manager.post('/api/waits/shelf', { moduleTypeId: ids.typeId }), 202);
   const [invitation] = await bodyOf<{ id: string }[]>(manager.get('/api/invitations'));
   return {
     name,
@@ -292,6 +299,8 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     capacityId: capacity.id,
     repairs,
     bench,
+    replayId: replay.id,
+    digestToken: digestToken(server.deps.secrets, workshop.people.manager.id),
     invitationId: invitation?.id ?? '',
     invitationToken: new URL(url).searchParams.get('token') ?? '',
     ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),

@@ -25,6 +25,8 @@ import { makeLimits, type LimitName, type LimitRule } from '@/server/services/li
 import { makeMetrics } from '@/server/services/metrics';
 import type { Passwords } from '@/server/services/passwords';
 import { secretsFrom } from '@/server/services/secrets';
+import { solveWaits } from '@/server/services/waits/solve-waits';
+import { makeWaitsSolver } from '@/server/services/waits/waits-solver';
 import { wallBoard } from '@/server/services/board.service';
 import { makeWallBoards, type WallBoards } from '@/server/services/wall-boards';
 import { defaultSettings } from '@/server/services/workshop-defaults';
@@ -259,6 +261,7 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     passwords,
     // The same reckoning, on this thread: what the thread itself does has tests of its own.
     bench: makeBenchSolver({ run: async (task) => solveTask(task), close: async () => {} }),
+    waits: makeWaitsSolver({ run: async (task) => solveWaits(task), close: async () => {} }),
     secrets: secretsFrom(Buffer.alloc(32, 7)),
     limits: makeLimits(options.limits),
     backups: makeBackups({ dataDir, everyHours: 0, clock, log: makeLog('silent') }),

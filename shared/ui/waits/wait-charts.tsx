@@ -39,8 +39,8 @@ export function WeekChart({ waits, onCsv }: { waits: WaitsDto; onCsv: () => void
               bars={waits.weeks.map((week) => ({
                 key: week.monday,
                 label: width / Math.max(1, waits.weeks.length) > 60 ? `wk ${week.week}` : String(week.week),
-                used: week.waitHours,
-                lost: 0,
+                used: week.usedHours,
+                lost: week.lostHours,
                 present: week === last,
               }))}
               twin={

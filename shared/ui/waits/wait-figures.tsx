@@ -27,19 +27,19 @@ export function WaitFigures({ waits, today }: { waits: WaitsDto; today: string }
         </Figure>
       ) : null}
       <Figure title="Wait of one charge" note="half of them waited less">
-        {waits.medianS === null ? <Txt kind="numL">–</Txt> : <Duration seconds={waits.medianS} kind="numL" />}
+        {waits.charges === 0 ? <Txt kind="numL">–</Txt> : <Duration seconds={waits.medianS} kind="numL" />}
       </Figure>
       <Figure title="9 of 10 waited less than" note={`${waits.charges} charges`}>
-        {waits.p90S === null ? <Txt kind="numL">–</Txt> : <Duration seconds={waits.p90S} kind="numL" />}
+        {waits.charges === 0 ? <Txt kind="numL">–</Txt> : <Duration seconds={waits.p90S} kind="numL" />}
       </Figure>
       <Figure
         title="Finish inside its band"
-        note={`80 % is the aim${waits.againstPlanS === null ? '' : `; ${againstPlan(waits.againstPlanS)} against the plan`}`}
+        note={`80 % is the aim${waits.plan === null ? '' : `; ${againstPlan(waits.plan.againstPlanS)} against the plan`}`}
       >
-        {waits.insideBand === null ? (
+        {waits.plan === null ? (
           <Txt kind="numL">–</Txt>
         ) : (
-          <Num value={String(Math.round(waits.insideBand * 100))} unit="%" kind="numL" />
+          <Num value={String(Math.round(waits.plan.insideBand * 100))} unit="%" kind="numL" />
         )}
       </Figure>
     </View>

@@ -34,6 +34,9 @@ const comeAndGo = {
     ...['repair_event', 'advised_item', 'photo', 'fitted_spare'],
     ...['place', 'skill', 'staffing', 'work', 'work_stint', 'bench_change'],
     ...['alert_turn', 'outbox_entry', 'push_device', 'alert_setting'],
+    'finished_wait',
+    'weekly_digest',
+    'digest_stop',
   ],
   columns: [
     ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],
@@ -44,6 +47,7 @@ const comeAndGo = {
     ...['unattended_charges', 'look_in_visit_minutes', 'fit_minutes', 'usual_arrival_volts'],
     ...['pass_on_tell_minutes', 'pass_on_amber_minutes', 'pass_on_alarm_minutes'],
     ...['wall_id', 'for_role', 'pass_due_at', 'turn'],
+    ...['fault_at', 'fault_seen', 'fault_by_id'],
   ],
 };
 

@@ -9,6 +9,7 @@ import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } 
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
 import { alertFixtures } from './route-fixtures-alerts';
+import { waitsFixtures } from './route-fixtures-waits';
 import { benchFixtures } from './route-fixtures-bench';
 
 export interface Fit {
@@ -243,6 +244,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/repairs': technician(),
   'POST /api/repairs': technician((f) => ({ body: booked(f) })),
   'GET /api/repairs/:id': technician(repair()),
+  'GET /api/repairs/:id/season': technician(repair()),
   'PATCH /api/repairs/:id': technician(repair(booked)),
   'POST /api/repairs/:id/readings': technician(repair((f) => packReadingForm({ meterId: f.meterId }))),
   'POST /api/repairs/:id/readings/:readingId/set-aside': technician((f) => ({
@@ -310,9 +312,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/search': technician(() => ({ query: 'q=van' })),
 
   'GET /api/board': technician(),
-  'GET /api/waits': foreman(),
-  'GET /api/waits.csv': foreman(),
-
+  ...waitsFixtures,
   ...benchFixtures,
   ...alertFixtures,
 };

@@ -1,7 +1,13 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { ChargerDto, ModuleTypeDto } from '@/shared/contract/equipment';
 import type { SpareDto } from '@/shared/contract/spare';
-import type { WaitsDto } from '@/shared/contract/waits';
+import {
+  waitDimensions,
+  type WaitChargesDto,
+  type WaitDimension,
+  type WaitGroupsDto,
+  type WaitsDto,
+} from '@/shared/contract/waits';
 import { channelForm, chargerForm, moduleTypeForm, readingForm, spareForm } from '../../support/forms';
 import { makeTestServer, type TestAgent, type TestServer } from '../../support/server';
 import { created, stock } from '../../support/stocked';
@@ -98,6 +104,10 @@ beforeAll(async () => {
 afterAll(() => server.close());
 
 const waits = async (query = ''): Promise<WaitsDto> => (await manager.get(`/api/waits${query}`).expect(200)).body;
+const groupsBy = async (by: WaitDimension): Promise<WaitGroupsDto> =>
+  (await manager.get(`/api/waits/groups?by=${by}`).expect(200)).body;
+const charges = async (query = ''): Promise<WaitChargesDto> =>
+  (await manager.get(`/api/waits/charges${query}`).expect(200)).body;
 
 describe('waits of ten charges worked through on paper', () => {
   it('cover eight whole weeks and the present one: 13 April to 9 June, 9 weeks, 10 charges', async () => {
@@ -109,8 +119,8 @@ describe('waits of ten charges worked through on paper', () => {
     const found = await waits();
     expect(found.medianS).toBeCloseTo(min(205), 6);
     expect(found.p90S).toBeCloseTo(min(438), 6);
-    expect(found.againstPlanS).toBeCloseTo(min(3.5), 6);
-    expect(found.insideBand).toBeCloseTo(0.7, 9);
+    expect(found.plan!.againstPlanS).toBeCloseTo(min(3.5), 6);
+    expect(found.plan!.insideBand).toBeCloseTo(0.7, 9);
   });
 
   it('make 1460 min in week 23 and 1020 min in week 24, where Monday 00:30 in Berlin belongs', async () => {
@@ -124,7 +134,10 @@ describe('waits of ten charges worked through on paper', () => {
     expect(week24!.waitHours).toBeCloseTo(1020 / 60, 9);
     expect(week24!.medianS).toBeCloseTo(min(180), 6);
     expect(week24!.p90S).toBeCloseTo(min(483), 6);
-    expect(weeks[0]).toEqual({ monday: '2026-04-13', week: 16, charges: 0, waitHours: 0, medianS: 0, p90S: 0 });
+    expect(weeks[0]).toEqual({
+      ...{ monday: '2026-04-13', week: 16, charges: 0, few: true, waitHours: 0, medianS: 0, p90S: 0 },
+      ...{ usedHours: 0, lostHours: 0 },
+    });
   });
 
   it('by module type: 6 of X with 165 and 205 min, 4 of Y with 360 and 546 min', async () => {
@@ -145,8 +158,8 @@ describe('waits of ten charges worked through on paper', () => {
   });
 
   it('by charger: 6 on B, 3 on C with the one that went on at B, 1 on none', async () => {
-    const { byCharger } = await waits();
-    expect(byCharger.map(({ name, charges }) => [name, charges])).toEqual([
+    const { groups } = await groupsBy('charger');
+    expect(groups.map(({ name, charges }) => [name, charges])).toEqual([
       ['Supply B', 6],
       ['Supply C', 3],
       ['no charger', 1],
@@ -165,7 +178,7 @@ describe('waits of ten charges worked through on paper', () => {
   });
 
   it('list the charges newest first; a top-up has waited since the first charge was asked for', async () => {
-    const { rows } = await waits();
+    const { rows } = await charges();
     expect(rows.map(({ title }) => title)).toEqual(
       ['10', '09', '08', '07', '06', '05', '04', '03', '02', '01'].map((number) => `C-00${number}`),
     );
@@ -193,13 +206,12 @@ describe('waits of ten charges worked through on paper', () => {
   it('of an empty period are empty, not zero', async () => {
     expect(await waits('?from=2026-05-04&to=2026-05-10')).toMatchObject({
       charges: 0,
-      medianS: null,
-      p90S: null,
-      againstPlanS: null,
-      insideBand: null,
+      few: true,
+      plan: null,
       stages: [],
-      rows: [],
+      byModuleType: [],
     });
+    expect(await charges('?from=2026-05-04&to=2026-05-10')).toEqual({ rows: [], next: null });
   });
 
   it('refuse days that are none or run backwards', async () => {
@@ -217,8 +229,17 @@ describe('waits of ten charges worked through on paper', () => {
     await server.agentFor('foreman').get('/api/waits').expect(200);
     await server.agentFor('technician').get('/api/waits').expect(403);
     await server.agentFor('technician').get('/api/waits.csv').expect(403);
-    const other = (await server.agentFor('manager', server.other).get('/api/waits').expect(200)).body as WaitsDto;
-    expect(other).toMatchObject({ charges: 0, rows: [] });
+    const stranger = server.agentFor('manager', server.other);
+    const other = (await stranger.get('/api/waits').expect(200)).body as WaitsDto;
+    expect(other).toMatchObject({ charges: 0, plan: null, byModuleType: [], channels: [] });
+    expect(other.weeks.every((week) => week.charges === 0)).toBe(true);
+    for (const by of waitDimensions)
+      expect((await stranger.get(`/api/waits/groups?by=${by}`).expect(200)).body.groups).toEqual([]);
+    // The ids of this workshop open nothing there.
+    expect((await stranger.get(`/api/waits/charges?moduleTypeId=${ids.X}`).expect(200)).body.rows).toEqual([]);
+    expect(
+      (await stranger.get(`/api/waits.csv?chargerId=${ids.B}`).expect(200)).text.trim().split('\r\n'),
+    ).toHaveLength(1);
   });
 
   it('as CSV have the same charges in the workshop’s clock', async () => {
@@ -228,8 +249,12 @@ describe('waits of ten charges worked through on paper', () => {
     const lines = answer.text.replace('\ufeff', '').trim().split('\r\n');
     expect(lines).toHaveLength(11);
     expect(lines[0]).toBe(
-      'Charge,Module type,Charger,Asked,Ready,"Waited, min","Planned, min","Actual, min",Inside band',
+      'Charge,Module type,Charger,Channel,Technician,Way,Asked,Ready,"Waited, min","Used, min","Lost, min","Planned, min",' +
+        '"Actual, min",Inside band,"Queue, min","Charging, min","Tapering, min","Resting, min","Check due, min"',
     );
-    expect(lines[10]).toBe('C-0001,2-series 66 Ah,Supply B,2026-06-02 10:00,2026-06-02 12:00,120,130,120,yes');
+    expect(lines[10]).toBe(
+      'C-0001,2-series 66 Ah,Supply B,B1,Technician of own,Through the terminals,2026-06-02 10:00,2026-06-02 12:00,' +
+        '120,0,120,130,120,yes,10,39,10,60,1',
+    );
   });
 });

@@ -1,6 +1,6 @@
 import { DateTime } from 'luxon';
 import type { WaitsQuery } from '@/shared/contract/waits';
-import { invalid } from '../errors/domain-error';
+import { invalid } from '../../errors/domain-error';
 
 /** Whole weeks before the present one that are shown when nobody asks for others. */
 const DEFAULT_WEEKS = 8;
@@ -29,7 +29,10 @@ export function waitPeriod(query: WaitsQuery, zone: string, now: number): DayPer
     query.from === undefined ? to.startOf('week').minus({ weeks: DEFAULT_WEEKS }) : dayOf('from', query.from, zone);
   if (from > to) throw invalid({ to: 'The last day lies before the first. Type a later one.' });
   const mondays: string[] = [];
-  for (let monday = from.startOf('week'); monday <= to; monday = monday.plus({ weeks: 1 }))
+  // Days without a clock: two years of them in a zone would take longer than the statements that follow.
+  const { year, month, day } = from.startOf('week');
+  const last = DateTime.utc(to.year, to.month, to.day);
+  for (let monday = DateTime.utc(year, month, day); monday <= last; monday = monday.plus({ weeks: 1 }))
     mondays.push(monday.toFormat(DAY));
   return {
     from: from.toFormat(DAY),
@@ -45,7 +48,7 @@ export const mondayOf = (at: number, zone: string): string =>
   DateTime.fromMillis(at, { zone }).startOf('week').toFormat(DAY);
 
 /** ISO number of the week that begins on this Monday. */
-export const weekNumberOf = (monday: string, zone: string): number => DateTime.fromISO(monday, { zone }).weekNumber;
+export const weekNumberOf = (monday: string): number => DateTime.fromISO(monday, { zone: 'utc' }).weekNumber;
 
 function dayOf(field: 'from' | 'to', day: string, zone: string): DateTime {
   const parsed = DateTime.fromISO(day, { zone });
