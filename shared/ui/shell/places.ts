@@ -107,6 +107,7 @@ const titles: Readonly<Record<string, string>> = {
   waiting: 'Waiting on this device',
   alerts: 'Alerts',
   waits: 'Waits',
+  'waits/charges': 'Charges behind the waits',
   'repairs/index': 'Repairs',
   'repairs/new': 'Start a repair',
   'repairs/[id]': 'Repair',
