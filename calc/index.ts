@@ -78,6 +78,7 @@ export { replayCharges } from './waits/replay-charges';
 export { channelsNeeded, type ChannelsNeeded } from './waits/channels-needed';
 export { erlangC, erlangChannels } from './waits/erlang-c';
 export { openBetween } from './waits/open-time';
+export { runMinutes, type RunInput } from './waits/run-minutes';
 export { shelfVolts, type ShelfInput, type ShelfVoltage } from './waits/shelf-volts';
 export {
   FEWEST_AVERAGED,

@@ -38,6 +38,8 @@ export function replayCharges(
     requireKind('kind', one.kind, kinds);
     if (!(one.actualMinutes > 0 && one.actualMinutes < Infinity))
       throw new CalcInputError('actualMinutes', one.actualMinutes, 'a number above 0');
+    if (!(one.afterMinutes === undefined || (one.afterMinutes >= 0 && one.afterMinutes < Infinity)))
+      throw new CalcInputError('afterMinutes', one.afterMinutes, '0 or more');
     if (!(one.usedShare >= 0 && one.usedShare <= 1))
       throw new CalcInputError('usedShare', one.usedShare, 'between 0 and 1');
     const model = input.durationMinutes(one, one.kind, {});
@@ -62,16 +64,17 @@ export function replayCharges(
   const done = [...charges.keys()].filter((at) => ran.kind[at]! >= 0);
   if (done.length < NEEDS) return { enough: false, needs: NEEDS, has: done.length };
   const openTime = openBetween(input.open);
+  const readyAt = (at: number) => ran.endMinutes[at]! + (charges[at]!.afterMinutes ?? 0);
   const first = charges.reduce((least, one) => Math.min(least, one.arrivalMinutes), Infinity);
   const last = charges.reduce((most, one) => Math.max(most, one.arrivalMinutes), -Infinity);
   const { lost, p50, p90 } = weekBootstrap(
     {
       week: Int32Array.from(done, (at) => Math.floor((charges[at]!.arrivalMinutes - first) / WEEK_MINUTES)),
       weeks: Math.floor((last - first) / WEEK_MINUTES) + 1,
-      waitHours: Float64Array.from(done, (at) => Math.max(0, ran.endMinutes[at]! - charges[at]!.arrivalMinutes) / 60),
+      waitHours: Float64Array.from(done, (at) => Math.max(0, readyAt(at) - charges[at]!.arrivalMinutes) / 60),
       lostHours: Float64Array.from(
         done,
-        (at) => (openTime(charges[at]!.arrivalMinutes, ran.endMinutes[at]!) / 60) * (1 - charges[at]!.usedShare),
+        (at) => (openTime(charges[at]!.arrivalMinutes, readyAt(at)) / 60) * (1 - charges[at]!.usedShare),
       ),
     },
     input.seed,

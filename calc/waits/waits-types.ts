@@ -58,6 +58,8 @@ export interface RecordedCharge {
   kind: number;
   /** How long it really held its channel, min. */
   actualMinutes: number;
+  /** From then until it was ready, at rest and checked, whatever it ran on, min; left out: at once. */
+  afterMinutes?: number;
   /** Share of the wait that was used for other work, 0…1. */
   usedShare: number;
   /** It ran while nobody was there. */

@@ -1,6 +1,14 @@
 import { Column, Entity, ForeignKey, Index, PrimaryColumn } from 'typeorm';
 import type { Way } from '@/calc/plan-types';
-import { flagColumn, idColumn, instantColumn, optionalInstantColumn, textColumn, wholeColumn } from './columns';
+import {
+  flagColumn,
+  idColumn,
+  instantColumn,
+  optionalInstantColumn,
+  optionalRealColumn,
+  textColumn,
+  wholeColumn,
+} from './columns';
 import { Charge } from './charge';
 import { Workshop } from './workshop';
 
@@ -85,4 +93,29 @@ export class FinishedWait {
 
   @Column(optionalInstantColumn('check_due_ms'))
   checkDueMs!: number | null;
+
+  /** When its repair was booked; null: it had none. */
+  @Column(optionalInstantColumn('booked_at'))
+  bookedAt!: number | null;
+
+  /** When it was wished to be ready; null: nobody said. */
+  @Column(optionalInstantColumn('due_at'))
+  dueAt!: number | null;
+
+  /** Its first channel was taken, and its last one free again; null: it used none. */
+  @Column(optionalInstantColumn('held_from_at'))
+  heldFromAt!: number | null;
+
+  @Column(optionalInstantColumn('held_to_at'))
+  heldToAt!: number | null;
+
+  /** What it was planned with: mean rest volts of its groups, those that were aimed at, and Ah of one group; null: not known. */
+  @Column(optionalRealColumn('from_volts'))
+  fromVolts!: number | null;
+
+  @Column(optionalRealColumn('to_volts'))
+  toVolts!: number | null;
+
+  @Column(optionalRealColumn('group_ah'))
+  groupAh!: number | null;
 }

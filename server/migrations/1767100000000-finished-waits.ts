@@ -34,6 +34,13 @@ export class FinishedWaits1767100000000 implements MigrationInterface {
         "tapering_ms" bigint,
         "resting_ms" bigint,
         "check_due_ms" bigint,
+        "booked_at" bigint,
+        "due_at" bigint,
+        "held_from_at" bigint,
+        "held_to_at" bigint,
+        "from_volts" double precision,
+        "to_volts" double precision,
+        "group_ah" double precision,
         CONSTRAINT "fk_finished_wait_workshop" FOREIGN KEY ("workshop_id") REFERENCES "workshop" ("id") ON DELETE NO ACTION ON UPDATE NO ACTION,
         CONSTRAINT "fk_finished_wait_charge" FOREIGN KEY ("charge_id") REFERENCES "charge" ("id") ON DELETE CASCADE ON UPDATE NO ACTION,
         PRIMARY KEY ("workshop_id", "ready_at", "charge_id")

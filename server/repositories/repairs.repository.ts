@@ -94,6 +94,20 @@ export async function repairRefs(
   return new Map(rows.map(({ id, number }) => [id, { id, number }]));
 }
 
+/** When each of these repairs was booked, epoch ms. */
+export async function bookedInstants(
+  manager: EntityManager,
+  workshopId: string,
+  ids: readonly string[],
+): Promise<Map<string, number>> {
+  if (ids.length === 0) return new Map();
+  const rows = await manager.find(Repair, {
+    where: { workshopId, id: In([...ids]) },
+    select: { id: true, createdAt: true },
+  });
+  return new Map(rows.map(({ id, createdAt }) => [id, createdAt]));
+}
+
 /** Every number of a repair that was ever used, those that only charges name too. */
 export async function repairNumbers(manager: EntityManager, workshopId: string): Promise<string[]> {
   const repairs = await manager.find(Repair, { where: { workshopId }, select: { id: true, number: true } });

@@ -26,6 +26,7 @@ const columns = {
   checkDueAt: true,
   checkedAt: true,
   topUpOf: true,
+  readyBy: true,
 } as const satisfies Partial<Record<keyof Charge, true>>;
 
 /** A charge without its plan, which is large. */
@@ -107,27 +108,85 @@ export async function askedInstants(
   return new Map(rows.map((row) => [row.id, row]));
 }
 
-/** Channel and charger of each charge's first step, by the charge's id; a charge without a channel is left out. */
-export async function firstChannels(
+/** What charges of a filter were aimed at, rest volts of a group, the newest 20,000. */
+export async function recordedTargets(manager: EntityManager, filter: WaitFilter): Promise<number[]> {
+  const { text, values } = rowsOf(filter);
+  const rows = (await manager.query(
+    `SELECT to_volts AS volts ${text} AND to_volts IS NOT NULL ORDER BY ready_at DESC LIMIT 20000`,
+    values,
+  )) as { volts: number }[];
+  return rows.map(({ volts }) => volts);
+}
+
+/** What each of these charges was planned with; out of the plan by SQLite, which is quicker than reading it whole. */
+export async function plannedNumbers(
+  manager: EntityManager,
+  workshopId: string,
+  ids: readonly string[],
+): Promise<Map<string, PlannedNumbers>> {
+  const found = new Map<string, PlannedNumbers>();
+  for (const id of ids) {
+    const [row] = (await manager.query(
+      `SELECT json_extract(frozen, '$.spare.groupVolts') AS volts, json_extract(frozen, '$.target.volts') AS toVolts,
+              json_extract(frozen, '$.spare.capacityAh') AS ampHours
+       FROM charge WHERE id = ? AND workshop_id = ?`,
+      [id, workshopId],
+    )) as { volts: string | null; toVolts: number | null; ampHours: string | number | null }[];
+    if (!row) continue;
+    const { volts, toVolts, ampHours } = row;
+    found.set(id, {
+      fromVolts: volts === null ? null : mean(JSON.parse(volts) as number[]),
+      toVolts,
+      groupAh: typeof ampHours === 'string' ? mean(JSON.parse(ampHours) as number[]) : ampHours,
+    });
+  }
+  return found;
+}
+export interface PlannedNumbers {
+  fromVolts: number | null;
+  toVolts: number | null;
+  groupAh: number | null;
+}
+const mean = (values: readonly number[]): number => values.reduce((sum, one) => sum + one, 0) / values.length;
+
+/** Of a charge: channel and charger of its first step, and when its first channel was taken and its last one freed. */
+export interface ChannelUse {
+  channelId: string;
+  chargerId: string;
+  fromAt: number;
+  /** Null: it has one still. */
+  toAt: number | null;
+}
+
+/** How each charge used channels, by its id; one without a channel is left out. */
+export async function channelUses(
   manager: EntityManager,
   workshopId: string,
   chargeIds: readonly string[],
-): Promise<Map<string, { channelId: string; chargerId: string }>> {
+): Promise<Map<string, ChannelUse>> {
   const rows = await manager
     .createQueryBuilder(ChannelHold, 'hold')
     .innerJoin(Channel, 'channel', 'channel.id = hold.channelId')
     .select('hold.chargeId', 'chargeId')
     .addSelect('hold.channelId', 'channelId')
     .addSelect('channel.chargerId', 'chargerId')
+    .addSelect('hold.fromAt', 'fromAt')
+    .addSelect('hold.toAt', 'toAt')
     .where('hold.workshopId = :workshopId AND hold.chargeId IN (:...chargeIds)', {
       workshopId,
       chargeIds: [...chargeIds],
     })
     .orderBy('hold.stepIndex', 'DESC')
     .addOrderBy('channel.name', 'DESC')
-    .getRawMany<{ chargeId: string; channelId: string; chargerId: string }>();
-  // The first step comes last, so that it is the one that stays in the map.
-  return new Map(rows.map(({ chargeId, channelId, chargerId }) => [chargeId, { channelId, chargerId }]));
+    .getRawMany<ChannelUse & { chargeId: string }>();
+  const uses = new Map<string, ChannelUse>();
+  for (const { chargeId, ...use } of rows) {
+    const later = uses.get(chargeId);
+    // The first step comes last, so that it is the one whose channel stays.
+    const toAt = !later ? use.toAt : use.toAt === null || later.toAt === null ? null : Math.max(use.toAt, later.toAt);
+    uses.set(chargeId, { ...use, fromAt: Math.min(use.fromAt, later?.fromAt ?? use.fromAt), toAt });
+  }
+  return uses;
 }
 
 /**

@@ -79,8 +79,8 @@ export interface WhatIfDto {
   leftOut: { charges: number; because: string }[];
 }
 
-export const shelfQuerySchema = z.object({ ...period, moduleTypeId: id });
-export type ShelfQuery = z.infer<typeof shelfQuerySchema>;
+export const shelfSchema = z.object({ ...period, moduleTypeId: id });
+export type ShelfInput = z.infer<typeof shelfSchema>;
 
 export interface ShelfDto {
   moduleTypeId: string;
@@ -88,14 +88,19 @@ export interface ShelfDto {
   enough: true;
   /** Recorded targets that the curve stands on. */
   charges: number;
-  /** Expected time on the charger against the shelf volts of a group. */
+  /** Expected time on the charger against the shelf volts of a group; without those from which a target is out of reach. */
   curve: { volts: number; meanMinutes: number }[];
   best: { volts: number; meanMinutes: number };
   /** As spares of the type are kept: their median; null: none is on the shelf. */
-  now: { volts: number; meanMinutes: number; spares: number } | null;
+  now: {
+    volts: number;
+    /** Null: from there a target cannot be reached with the present channels. */
+    meanMinutes: number | null;
+    spares: number;
+  } | null;
   window: { lowVolts: number; highVolts: number };
-  /** Bringing the present stock to the best takes this of the chargers, h. */
-  stockChargerHours: number;
+  /** Bringing the present stock to the best takes this of the chargers, h; null: some of it cannot be brought there. */
+  stockChargerHours: number | null;
 }
 export type ShelfAnswer = ShelfDto | (TooFewDto & { moduleTypeId: string; typeName: string });
 
@@ -113,10 +118,14 @@ export interface ChannelsNeededDto {
   present: number;
   channels: number | null;
   replay: ReplayDto;
+  leftOut: { charges: number; because: string }[];
   /** By Erlang's formula, for all kinds together: a rough check; null: a charge alone takes longer than is wished. */
   roughChannels: number | null;
 }
 export type ChannelsNeededAnswer = ChannelsNeededDto | TooFewDto;
+
+/** At most so many charges are replayed, the newest of the period; the others are told in `leftOut`. */
+export const MOST_REPLAYED = 20_000;
 
 /** A calculation over the history goes on beside the request that began it: it is asked for until it is over. */
 export interface ReplayJobDto {

@@ -52,6 +52,8 @@ export interface Furnished {
   bench: Benched;
   /** A capacity of the spare on the shelf that waits for an answer. */
   capacityId: string;
+  /** A calculation over the waits. */
+  replayId: string;
   invitationId: string;
   invitationToken: string;
   wallId: string;
@@ -83,6 +85,7 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.reservedSpareId,
   ...Object.values(furnished.repairs).filter((id) => typeof id === 'string'),
   ...Object.values(furnished.bench).filter((id) => typeof id === 'string'),
+  furnished.replayId,
   furnished.invitationId,
   furnished.wallId,
 ];
@@ -271,6 +274,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     manager.post('/api/invitations', { email: `nell@${name}.example.com`, role: 'technician' }),
     201,
   );
+  const replay = await bodyOf<{ id: string }>(manager.post('/api/waits/shelf', { moduleTypeId: ids.typeId }), 202);
   const [invitation] = await bodyOf<{ id: string }[]>(manager.get('/api/invitations'));
   return {
     name,
@@ -287,6 +291,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     capacityId: capacity.id,
     repairs,
     bench,
+    replayId: replay.id,
     invitationId: invitation?.id ?? '',
     invitationToken: new URL(url).searchParams.get('token') ?? '',
     ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),

@@ -4,7 +4,7 @@ import type { FinishedWait } from '../../entities/finished-wait';
 import type { RepairWait } from '../../entities/repair-wait';
 import type { Workshop } from '../../entities/workshop';
 import type { WorkStint } from '../../entities/work-stint';
-import type { WaitedCharge } from '../../repositories/waits.repository';
+import type { ChannelUse, PlannedNumbers, WaitedCharge } from '../../repositories/waits.repository';
 import { common, lengthOf, overlaps, united, type Stretch } from '../bench-plan/spans';
 import { stintSpan } from '../bench-plan/stint-spans';
 import { presentSpans } from '../presence';
@@ -17,8 +17,11 @@ export interface WaitGround {
   charge: WaitedCharge & { readyAt: number };
   /** When it was asked for: of a top-up, when the first charge of its row was. */
   askedAt: number;
-  /** Of its first step; null: it used none. */
-  channel: { channelId: string; chargerId: string } | null;
+  /** Null: it used none. */
+  channel: ChannelUse | null;
+  planned: PlannedNumbers;
+  /** When its repair was booked, epoch ms; null: it has none. */
+  bookedAt: number | null;
   /** Of its repair. */
   repairWaits: readonly Pick<RepairWait, 'fromAt' | 'toAt'>[];
   /** Who waits: the people of its repair, else whose charge it is. */
@@ -41,7 +44,7 @@ export function waitStretches({ charge, askedAt, repairWaits }: WaitGround): Str
 
 /** Its row of the statistics. Used is other work of its people, or work taken for its wait, within working hours. */
 export function finishedWaitRow(ground: WaitGround): FinishedWait {
-  const { workshop, charge, channel, personIds, stints } = ground;
+  const { workshop, charge, channel, personIds, stints, planned, bookedAt } = ground;
   const waits = waitStretches(ground);
   const from = Math.min(...waits.map((one) => one.from), charge.readyAt);
   const to = Math.max(...waits.map((one) => one.to), from);
@@ -74,6 +77,11 @@ export function finishedWaitRow(ground: WaitGround): FinishedWait {
     taperingMs: between(charge.taperAt, charge.currentEndAt),
     restingMs: between(charge.currentEndAt, charge.checkDueAt),
     checkDueMs: between(charge.checkDueAt, charge.checkedAt ?? charge.readyAt),
+    ...planned,
+    bookedAt,
+    dueAt: charge.readyBy,
+    heldFromAt: channel?.fromAt ?? null,
+    heldToAt: channel?.toAt ?? null,
   };
 }
 

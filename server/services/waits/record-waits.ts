@@ -2,10 +2,12 @@
 import type { EntityManager } from 'typeorm';
 import type { Charge } from '../../entities/charge';
 import type { Workshop } from '../../entities/workshop';
+import { bookedInstants } from '../../repositories/repairs.repository';
 import { waitsOfRepairs, peopleOfRepairs } from '../../repositories/repair-rows.repository';
 import {
   askedInstants,
-  firstChannels,
+  channelUses,
+  plannedNumbers,
   replaceFinishedWaits,
   waitedChargesById,
   waitedWithin,
@@ -44,14 +46,13 @@ async function groundsOf(
 ): Promise<WaitGround[]> {
   const { id: workshopId } = workshop;
   const asked = await firstAskedInstants(manager, workshopId, charges);
-  const channels = await firstChannels(
-    manager,
-    workshopId,
-    charges.map(({ id }) => id),
-  );
+  const ids = charges.map(({ id }) => id);
+  const channels = await channelUses(manager, workshopId, ids);
+  const planned = await plannedNumbers(manager, workshopId, ids);
   const repairIds = [...new Set(charges.flatMap(({ repairId }) => (repairId === null ? [] : [repairId])))];
   const repairWaits = await waitsOfRepairs(manager, workshopId, repairIds);
   const people = await peopleOfRepairs(manager, workshopId, repairIds);
+  const booked = await bookedInstants(manager, workshopId, repairIds);
   const grounds = charges.flatMap((charge): WaitGround[] => {
     const { readyAt, repairId, personId } = charge;
     if (readyAt === null) return [];
@@ -62,6 +63,8 @@ async function groundsOf(
         charge: { ...charge, readyAt },
         askedAt: Math.min(readyAt, asked.get(charge.id) ?? charge.createdAt),
         channel: channels.get(charge.id) ?? null,
+        planned: planned.get(charge.id) ?? { fromVolts: null, toVolts: null, groupAh: null },
+        bookedAt: repairId === null ? null : (booked.get(repairId) ?? null),
         repairWaits: repairId === null ? [] : (repairWaits.get(repairId) ?? []),
         personIds: ofRepair.length > 0 || personId === null ? ofRepair : [personId],
         stints: [],

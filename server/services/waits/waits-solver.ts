@@ -1,10 +1,13 @@
 import { DomainError } from '../../errors/domain-error';
 import { WorkerPool } from '../worker-pool';
+import { ReplayJobs } from './replay-jobs';
 import type { WaitsAnswer, WaitsAnswers, WaitsTask } from './waits-tasks';
 
 /** Runs tasks over the history of waits, off the event loop. */
 export interface WaitsSolver {
   run<Task extends WaitsTask>(task: Task): Promise<WaitsAnswers[Task['kind']]>;
+  /** Those that go on beside the request that began them. */
+  jobs: ReplayJobs;
   close(): Promise<void>;
 }
 
@@ -32,6 +35,7 @@ const waitsThread = (): WaitsRunner =>
 export function makeWaitsSolver(runner: WaitsRunner = waitsThread()): WaitsSolver {
   return {
     run: <Task extends WaitsTask>(task: Task) => runner.run(task) as Promise<WaitsAnswers[Task['kind']]>,
+    jobs: new ReplayJobs(),
     close: () => runner.close(),
   };
 }

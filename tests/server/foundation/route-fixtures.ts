@@ -314,6 +314,14 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/waits/charges': foreman(),
   'GET /api/waits/compare': foreman(() => ({ query: 'compareFrom=2026-04-01&compareTo=2026-04-30' })),
 
+  'POST /api/waits/what-if': foreman((f) => ({
+    body: { questions: [{ moreLikeChannelId: f.channelId }], together: false },
+  })),
+  'POST /api/waits/channels-needed': foreman((f) => ({ body: { channelId: f.channelId, wishedP90Hours: 4 } })),
+  'POST /api/waits/shelf': foreman((f) => ({ body: { moduleTypeId: f.typeId } })),
+  'GET /api/waits/replays/:id': foreman((f) => ({ params: { id: f.replayId } })),
+  'POST /api/waits/replays/:id/cancel': foreman((f) => ({ params: { id: f.replayId } })),
+
   ...benchFixtures,
   ...alertFixtures,
 };

@@ -25,6 +25,8 @@ export interface PastCharge {
   /** Ready minus planned likely, min; the band is 15 min before to 25 min after the likely finish. */
   lateMin: number;
   topUpOf?: string | null;
+  /** Rest volts of a group and its Ah, as it was planned; left out: nothing is known of it. */
+  planned?: { fromVolts: number; toVolts: number; groupAh: number };
 }
 
 export function pastChargeRow(past: PastCharge): Charge {
@@ -54,9 +56,9 @@ export function pastChargeRow(past: PastCharge): Charge {
     targetMeterId: null,
     targetCelsius: null,
     minRestS: 3600,
-    // Nobody reads the plan of a closed charge for its waits.
+    // Nobody reads more of the plan of a closed charge for its waits.
     option: {} as Charge['option'],
-    frozen: {} as Charge['frozen'],
+    frozen: frozenOf(past) as Charge['frozen'],
     reckoning: null,
     readyBy: null,
     clipOnAt: at(past.waitMin),
@@ -84,6 +86,14 @@ export function pastChargeRow(past: PastCharge): Charge {
     createdAt: at(past.waitMin),
   };
 }
+
+const frozenOf = ({ planned }: PastCharge): object =>
+  planned
+    ? {
+        spare: { groupVolts: [planned.fromVolts, planned.fromVolts], capacityAh: planned.groupAh },
+        target: { volts: planned.toVolts },
+      }
+    : {};
 
 export async function writePast(manager: EntityManager, past: readonly PastCharge[]): Promise<void> {
   const rows = past.map(pastChargeRow);
