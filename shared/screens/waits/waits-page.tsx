@@ -19,10 +19,13 @@ import { WaitFigures } from '@/shared/ui/waits/wait-figures';
 import { chargesWord, stageNames } from '@/shared/ui/waits/wait-words';
 import { WeekChart } from '@/shared/ui/waits/week-chart';
 import { ChargesPart } from './charges-part';
+import { ChannelsPart } from './channels-part';
 import { ComparePart } from './compare-part';
 import { CsvButton } from './csv-button';
 import { FiltersPart } from './filters-part';
 import { GroupsPart } from './groups-part';
+import { ShelfPart } from './shelf-part';
+import { ShortenPart } from './shorten-part';
 import { useCsv, type Csv } from './use-csv';
 import { useWaitAddress, type WaitAddressHeld } from './use-wait-address';
 
@@ -115,6 +118,12 @@ function Body({ address, csv, data }: { address: WaitAddressHeld; csv: Csv; data
         <ChargesPart address={address} count={data.charges} />
       </View>
       <View style={[styles.stack, wide && styles.side]}>
+        <ShortenPart address={address} />
+        <Rule gap={0} />
+        <ShelfPart address={address} />
+        <Rule gap={0} />
+        <ChannelsPart address={address} />
+        <Rule gap={0} />
         <ComparePart address={address} />
       </View>
     </View>
@@ -138,5 +147,5 @@ const useStyles = makeStyles(({ colors }) => ({
   },
   beside: { flexDirection: 'row', columnGap: 32, alignItems: 'flex-start' },
   weeks: { flexGrow: 1, flexShrink: 1, flexBasis: 0, minWidth: 0 },
-  busy: { width: 220 },
+  busy: { width: 260 },
 }));

@@ -8,6 +8,7 @@ import { Table } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
 import { touch } from '../theme/tokens';
+import { useBreakpoint } from '../theme/use-breakpoint';
 import { web } from '../theme/web-props';
 
 const busyText = (one: ChannelBusyDto): string => (one.share === null ? '–' : share(one.share));
@@ -23,10 +24,11 @@ export function ChannelBusy({
   onCsv?: (() => void) | undefined;
 }) {
   const styles = useStyles();
+  const wide = useBreakpoint() === 'wide';
   return (
     <ChartFrame
       heading="Channel busy"
-      note="Of the working hours; all charges, also those not finished."
+      note="Of the working hours; also charges not finished yet."
       {...(onCsv ? { onCsv } : {})}
       picture={
         <View role="list" aria-label="Channel busy">
@@ -37,7 +39,7 @@ export function ChannelBusy({
                 aria-label={`${one.name}${one.retired ? ', retired' : ''}, busy ${busyText(one)}. Open its charges`}
                 onPress={() => onChannel(one.channelId)}
                 {...web({ dataSet: { press: '' } })}
-                style={({ pressed }) => [styles.row, pressed && styles.pressed]}
+                style={({ pressed }) => [styles.row, wide && styles.low, pressed && styles.pressed]}
               >
                 <Txt kind="numS" nowrap style={styles.name}>
                   {one.name}
@@ -72,6 +74,8 @@ export function ChannelBusy({
 
 const useStyles = makeStyles(({ colors }) => ({
   row: { flexDirection: 'row', alignItems: 'center', columnGap: 12, minHeight: touch.min },
+  // As low as the rows of a table on the desk.
+  low: { minHeight: 34 },
   pressed: { backgroundColor: colors.well },
   name: { minWidth: 36 },
   share: { width: 56 },

@@ -6,6 +6,7 @@ import { ChartFrame } from '../charts/chart-frame';
 import { durationTable } from '../format/duration';
 import { fixed } from '../format/number';
 import { Table } from '../primitives/table';
+import { useBreakpoint } from '../theme/use-breakpoint';
 import { web } from '../theme/web-props';
 import { useWidth } from './use-width';
 import { chargesWord, fewWords } from './wait-words';
@@ -26,11 +27,13 @@ export function WeekChart({
   onCsv?: (() => void) | undefined;
 }) {
   const { width, onLayout } = useWidth();
+  // Beside heading and links a phone has no room for the key.
+  const phone = useBreakpoint() === 'phone';
   return (
     <View onLayout={onLayout}>
       <ChartFrame
         heading="Hours of waiting, by week"
-        legend={<BarKey />}
+        {...(phone ? { note: 'Solid: used. Hatched: lost.' } : { legend: <BarKey /> })}
         {...(onCsv ? { onCsv } : {})}
         picture={width === 0 ? null : <Bars weeks={weeks} today={today} width={width} onWeek={onWeek} />}
         table={<WeekTable weeks={weeks} onWeek={onWeek} />}

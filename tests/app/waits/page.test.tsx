@@ -83,7 +83,7 @@ describe('the waits', () => {
     serverOf();
     draw(<Waits />);
     // The choices come with an answer of their own.
-    await screen.findByRole('option', { name: '2-series 66 Ah' });
+    await within(await screen.findByLabelText('Module type')).findByRole('option', { name: '2-series 66 Ah' });
     fireEvent.change(screen.getByLabelText('Module type'), { target: { value: 't1' } });
     expect(set).toHaveBeenLastCalledWith({ type: 't1' });
     fireEvent.click(await press(/^More filters/));
