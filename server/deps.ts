@@ -4,6 +4,7 @@ import type { Role } from '@/shared/contract/roles';
 import type { Outbox } from './alerts/outbox';
 import type { Clock } from './clock';
 import type { Config } from './config';
+import type { Outside } from './demo/outside/outside';
 import type { Lifecycle } from './lifecycle';
 import type { LiveHub } from './live/hub';
 import type { Sleeper } from './live/sleeper';
@@ -14,6 +15,7 @@ import type { Metrics } from './services/metrics';
 import type { Passwords } from './services/passwords';
 import type { Secrets } from './services/secrets';
 import type { WaitsSolver } from './services/waits/waits-solver';
+import type { WallBoards } from './services/wall-boards';
 
 /** What every service gets. Made once in create-app. */
 export interface Deps {
@@ -22,6 +24,8 @@ export interface Deps {
   config: Config;
   log: Logger;
   hub: LiveHub;
+  /** Boards of the walls, read once for all who ask. The hub tells them what changed. */
+  wallBoards: WallBoards;
   sleeper: Sleeper;
   /** What goes out of the house. */
   outbox: Outbox;
@@ -39,6 +43,8 @@ export interface Deps {
   /** Copies of the data. */
   backups: Backups;
   metrics: Metrics;
+  /** The services outside as the demo has them; null: the real ones. */
+  outside: Outside | null;
 }
 
 /** Who asks, from the session; never from the request's body. */

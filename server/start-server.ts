@@ -9,6 +9,7 @@ import { isEveryAddress, type Config } from './config';
 import { createApp } from './create-app';
 import { assertDurable, makeDataSource } from './data-source';
 import { databaseFile, prepareDataFolder } from './data-files';
+import { startOutside, type Outside } from './demo/outside/outside';
 import { seedDemo } from './demo/seed';
 import type { Deps } from './deps';
 import { lockFolder, type FolderLock } from './folder-lock';
@@ -30,6 +31,9 @@ import { inTransaction } from './services/unit-of-work';
 import { version } from './services/version';
 import { fillWaits } from './services/waits/fill-waits';
 import { makeWaitsSolver } from './services/waits/waits-solver';
+import { makeWeeklyDigests } from './services/waits/weekly-digests';
+import { wallBoard } from './services/board.service';
+import { makeWallBoards } from './services/wall-boards';
 import { sweepPhotos } from './sweep-photos';
 
 /** Requests under way get this long to end when the server stops, ms. */
@@ -113,13 +117,18 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
   const passwords = makePasswords();
   const bench = makeBenchSolver();
   const waits = makeWaitsSolver();
+  let outside: Outside | null = null;
   try {
     await assertDurable(dataSource);
     const migrations = await migrate(dataSource, config.dataDir, clock.now(), log);
     if (migrations.length > 0) log.info({ migrations }, 'database migrated');
-    const hub = makeSocketHub({ config, dataSource, secrets, clock, log });
-    const ways = makeWays(config);
+    const wallBoards = makeWallBoards((workshopId, now) => wallBoard({ dataSource }, workshopId, now));
+    const hub = makeSocketHub({ config, dataSource, secrets, clock, log, wallBoards });
+    if (config.demo && config.mail) log.warn('the demo keeps its letters: BIDEWELL_SMTP_URL is not used');
+    outside = config.demo ? await startOutside(secrets.demoKey, clock) : null;
+    const ways = outside === null ? makeWays(config) : makeWays({ ...config, mail: outside.mail }, outside);
     const dispatcher = makeDispatcher({ dataSource, clock, log, hub, ways, random: Math.random });
+    const digests = makeWeeklyDigests({ dataSource, clock, log, config, secrets, ways, random: Math.random });
     const outbox = { poke: dispatcher.poke, pushKey: ways.pushKey, eMail: ways.eMail !== null };
     const sleeper = makeSleeper({ dataSource, clock, log, hub, outbox });
     const limits = makeLimits();
@@ -131,6 +140,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       config,
       log,
       hub,
+      wallBoards,
       sleeper,
       outbox,
       lifecycle,
@@ -141,6 +151,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       limits,
       backups,
       metrics,
+      outside,
     };
     if (config.demo) await seedDemo(deps);
     const filled = await inTransaction(deps, fillWaits);
@@ -154,6 +165,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     const port = await listenOn(server, config);
     // What waits goes out beside the start: a mail server that does not answer must not keep the workshop waiting.
     const sending = quietly(dispatcher.start(), log, 'the dispatcher did not start');
+    const telling = quietly(digests.start(), log, 'the weekly digest did not start');
     lifecycle.ready = true;
     watchProcess(deps);
     backups.start();
@@ -163,8 +175,10 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
       await quietly(backups.stop(), log, 'the copying did not stop');
       await quietly(sleeper.stop(), log, 'the sleeper did not stop');
       await quietly(dispatcher.stop(), log, 'the dispatcher did not stop');
-      await sending;
+      await quietly(digests.stop(), log, 'the weekly digest did not stop');
+      await Promise.all([sending, telling]);
       ways.close();
+      await quietly(outside?.close() ?? Promise.resolve(), log, 'the services of the demo did not close');
       // Closes the sockets and the server's port; resolves when the last request under way has ended.
       await quietly(hub.close(), log, 'the sockets did not close');
       clearTimeout(drained);
@@ -178,6 +192,7 @@ async function startLocked(config: Config, log: Logger, clock: Clock, lock: Fold
     };
     return { address: addressOf(config, port), port, deps, stop };
   } catch (error) {
+    await outside?.close();
     await passwords.close();
     await bench.close();
     await waits.close();

@@ -1,13 +1,14 @@
 import { Stack, usePathname, useRouter, type Href } from 'expo-router';
-import { useCallback, useEffect, useMemo } from 'react';
+import { useCallback, useEffect } from 'react';
 import { View } from 'react-native';
 import { useAlarmBell } from '@/shared/client/alarm-bell';
 import { useBuildOffer, useKeptApp } from '@/shared/client/build-offer';
-import { isOpen, useAlerts, useOpenAlertCount } from '@/shared/client/alerts';
+import { useOpenAlertCount } from '@/shared/client/alerts';
 import { useLink } from '@/shared/client/link';
 import { startLive } from '@/shared/client/live';
 import { takeNewBuild } from '@/shared/client/new-build';
 import { useNotices } from '@/shared/client/notices';
+import { useReadOut } from '@/shared/client/read-out';
 import { useNeedsSomebodyCount } from '@/shared/client/repairs';
 import { useCan, useKeptAnswers, useSession } from '@/shared/client/session';
 import { useWaitingCounts, useWaitingRunner } from '@/shared/client/waiting/waiting';
@@ -104,13 +105,6 @@ function Strip() {
 
 /** Reads each new alert out, once. */
 function Announcer() {
-  const alerts = useAlerts().data;
-  const words = useMemo(
-    () =>
-      (alerts ?? [])
-        .filter(isOpen)
-        .map(({ id, title, seen, checkFirst }) => ({ id, text: [title, seen, checkFirst].join(' ') })),
-    [alerts],
-  );
-  return alerts ? <AlertRegion alerts={words} /> : null;
+  const words = useReadOut();
+  return words ? <AlertRegion alerts={words} /> : null;
 }

@@ -113,7 +113,8 @@ function Me() {
   const now = useNow(60_000);
   const counts = useWaitingCounts();
   const waiting = counts.waiting + counts.refused;
-  const version = useFrontDoor().data?.version;
+  const frontDoor = useFrontDoor().data;
+  const version = frontDoor?.version;
   const [open, setOpen] = useState<'sessions' | 'sign-out' | null>(null);
   const sessions = useSessions(open === 'sessions');
   const signOut = useSignOut();
@@ -136,6 +137,15 @@ function Me() {
         href="/me/alerts"
         onPress={() => router.navigate('/me/alerts' as Href)}
       />
+      {frontDoor?.demo ? (
+        <MoreRow
+          icon="alerts"
+          title="Mailbox of the demo"
+          meaning="Letters and pushes that it has sent"
+          href="/demo/mailbox"
+          onPress={() => router.navigate('/demo/mailbox' as Href)}
+        />
+      ) : null}
       <MoreRow title="Signed in on" meaning="Devices, and sign out everywhere" onPress={() => setOpen('sessions')} />
       {waiting > 0 ? (
         <MoreRow

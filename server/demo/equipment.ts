@@ -249,5 +249,8 @@ const channelRow = (spec: ChannelSpec): Channel => ({
   deratingAboveCelsius: null,
   deratingPercent: null,
   dutyPercent: null,
+  faultAt: null,
+  faultSeen: null,
+  faultById: null,
   retired: false,
 });

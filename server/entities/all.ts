@@ -11,6 +11,7 @@ import { ChargeEvent } from './charge-event';
 import { ChargeReading } from './charge-reading';
 import { Charger } from './charger';
 import { CheckAnswer } from './check-answer';
+import { DigestStop } from './digest-stop';
 import { FinishedWait } from './finished-wait';
 import { FittedSpare } from './fitted-spare';
 import { IdempotencyKey } from './idempotency-key';
@@ -42,6 +43,7 @@ import { SpareReading } from './spare-reading';
 import { Staffing } from './staffing';
 import { Wall } from './wall';
 import { WallCode } from './wall-code';
+import { WeeklyDigest } from './weekly-digest';
 import { Work } from './work';
 import { WorkStint } from './work-stint';
 import { Workshop } from './workshop';
@@ -64,6 +66,8 @@ export const entities = [
   SpareCapacity,
   ChannelHold,
   FinishedWait,
+  WeeklyDigest,
+  DigestStop,
   RunStretch,
   ChargeReading,
   CheckAnswer,

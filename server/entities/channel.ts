@@ -1,5 +1,14 @@
 import { Column, Entity, ForeignKey, Index, PrimaryColumn, Unique } from 'typeorm';
-import { flagColumn, idColumn, optionalFlagColumn, optionalRealColumn, realColumn, textColumn } from './columns';
+import {
+  flagColumn,
+  idColumn,
+  optionalFlagColumn,
+  optionalInstantColumn,
+  optionalRealColumn,
+  optionalTextColumn,
+  realColumn,
+  textColumn,
+} from './columns';
 import { Charger } from './charger';
 import { Workshop } from './workshop';
 
@@ -72,6 +81,17 @@ export class Channel {
 
   @Column(optionalRealColumn('duty_percent'))
   dutyPercent!: number | null;
+
+  /** Since when it is out of order; null: it is not. */
+  @Column(optionalInstantColumn('fault_at'))
+  faultAt!: number | null;
+
+  @Column(optionalTextColumn('fault_seen'))
+  faultSeen!: string | null;
+
+  /** Who said so. No foreign key (see its migration); people are never deleted. */
+  @Column(optionalTextColumn('fault_by_id'))
+  faultById!: string | null;
 
   @Column(flagColumn('retired'))
   retired!: boolean;

@@ -6,9 +6,10 @@ import { boardRevsOf } from '../repositories/workshops.repository';
 import { touchWalls } from '../repositories/walls.repository';
 import { toInstant } from '../services/instants';
 import { inTransaction } from '../services/unit-of-work';
-import { endReasonOf, heardStepMs } from '../services/who-asks';
+import { endReasonsOf, heardStepMs } from '../services/who-asks';
 import { askerOf, handshakeFromOwnPage } from './handshake';
 import type { LiveEvent, LiveHub, LivePayload } from './hub';
+import { makeWallTeller } from './wall-teller';
 import { listen, type LiveSocket, type SocketAsker } from './socket-handlers';
 
 export interface SocketHub extends LiveHub {
@@ -21,17 +22,7 @@ export interface SocketHub extends LiveHub {
   close(): Promise<void>;
 }
 
-type HubDeps = Pick<Deps, 'config' | 'dataSource' | 'secrets' | 'clock' | 'log'>;
-
-/** What a wall hears: that the board or its channels changed and that it is heard. The rest is people's. */
-const wallEvents: ReadonlySet<LiveEvent> = new Set<LiveEvent>([
-  'board:changed',
-  'charge:changed',
-  'equipment:changed',
-  'workshop:changed',
-  'heartbeat',
-  'session:ended',
-]);
+type HubDeps = Pick<Deps, 'config' | 'dataSource' | 'secrets' | 'clock' | 'log' | 'wallBoards'>;
 
 /** What the library itself tells a socket; no client can send these. */
 const ownEvents: ReadonlySet<string> = new Set(['disconnect', 'error']);
@@ -44,14 +35,14 @@ const rooms = {
   wall: (id: string) => `wall ${id}`,
 };
 
-const roomsOf = (asker: SocketAsker): string[] =>
+/** Where one is reached who has to go. */
+const ownRooms = (asker: SocketAsker): string[] =>
   asker.kind === 'wall'
-    ? [rooms.walls(asker.wall.workshopId), rooms.wall(asker.wall.id)]
-    : [
-        rooms.members(asker.member.workshopId),
-        rooms.person(asker.member.personId),
-        rooms.session(asker.member.sessionId),
-      ];
+    ? [rooms.wall(asker.wall.id)]
+    : [rooms.person(asker.member.personId), rooms.session(asker.member.sessionId)];
+/** Where their workshop is heard. */
+const workshopRoom = (asker: SocketAsker): string =>
+  asker.kind === 'wall' ? rooms.walls(asker.wall.workshopId) : rooms.members(asker.member.workshopId);
 
 const workshopOf = (asker: SocketAsker): string =>
   asker.kind === 'wall' ? asker.wall.workshopId : asker.member.workshopId;
@@ -89,28 +80,36 @@ export function makeSocketHub(deps: HubDeps): SocketHub {
   });
 
   io.on('connection', (socket: LiveSocket) => {
-    void socket.join(roomsOf(socket.data.asker));
+    void socket.join(ownRooms(socket.data.asker));
     listen(socket, deps);
     socket.on('disconnect', stopWhenAlone);
     startTimer();
-    // Between the handshake's look at the database and this room somebody may have been signed out.
     void greet(socket).catch((error: unknown) => deps.log.error({ err: error }, 'a socket was not greeted'));
   });
 
   async function greet(socket: LiveSocket): Promise<void> {
-    if (await endIfOver(socket, deps.clock.now())) return;
-    const workshopId = workshopOf(socket.data.asker);
+    // Between the handshake's look at the database and their own room somebody may have been signed out.
+    await endThoseOver([socket], deps.clock.now());
+    if (!socket.connected) return;
+    const { asker } = socket.data;
+    await socket.join(workshopRoom(asker));
+    // After that: what is committed from now on is told, what was before is in the revision.
+    if (asker.kind === 'wall') teller.watch(asker.wall.workshopId);
+    const workshopId = workshopOf(asker);
     const rev = (await boardRevsOf(deps.dataSource.manager, [workshopId])).get(workshopId) ?? 0;
     socket.emit('heartbeat', { at: toInstant(deps.clock.now()), rev });
   }
 
-  /** Ends a socket whose session or wall is over. */
-  async function endIfOver(socket: LiveSocket, now: number): Promise<boolean> {
-    const reason = await endReasonOf(deps, socket.data.asker, now);
-    if (!reason) return false;
-    socket.emit('session:ended', { reason });
-    socket.disconnect(true);
-    return true;
+  /** Ends the sockets whose session or wall is over. */
+  async function endThoseOver(sockets: readonly LiveSocket[], now: number): Promise<void> {
+    const askers = sockets.map((socket) => socket.data.asker);
+    const reasons = await endReasonsOf(deps, askers, now);
+    for (const socket of sockets) {
+      const reason = reasons.get(socket.data.asker);
+      if (!reason) continue;
+      socket.emit('session:ended', { reason });
+      socket.disconnect(true);
+    }
   }
 
   function startTimer(): void {
@@ -134,8 +133,7 @@ export function makeSocketHub(deps: HubDeps): SocketHub {
 
   async function beat(): Promise<void> {
     const now = deps.clock.now();
-    const sockets = [...io.sockets.sockets.values()];
-    for (const socket of sockets) await endIfOver(socket, now);
+    await endThoseOver([...io.sockets.sockets.values()], now);
     const askers = [...io.sockets.sockets.values()].map((socket) => socket.data.asker);
     const workshops = [...new Set(askers.map(workshopOf))];
     const revs = await boardRevsOf(deps.dataSource.manager, workshops);
@@ -153,21 +151,26 @@ export function makeSocketHub(deps: HubDeps): SocketHub {
     io.to(to).emit(event, ...([payload] as unknown as Parameters<ServerToClientEvents[E]>));
   }
 
+  const sizeOf = (room: string): number => io.sockets.adapter.rooms.get(room)?.size ?? 0;
+  const teller = makeWallTeller(deps, {
+    count: (workshopId) => sizeOf(rooms.walls(workshopId)),
+    tell: (workshopId, change) => emit([rooms.walls(workshopId)], 'wall:changed', change),
+  });
+
   const hub: SocketHub = {
-    toWorkshop: (workshopId, event, payload) =>
-      emit(
-        wallEvents.has(event) ? [rooms.members(workshopId), rooms.walls(workshopId)] : [rooms.members(workshopId)],
-        event,
-        payload,
-      ),
+    toWorkshop: (workshopId, event, payload) => {
+      // Before anybody hears of it and asks.
+      if (event !== 'heartbeat') deps.wallBoards.changed(workshopId);
+      // Walls hear that they are heard, and what changes on their board. The rest is people's.
+      const beat = event === 'heartbeat';
+      emit(beat ? [rooms.members(workshopId), rooms.walls(workshopId)] : [rooms.members(workshopId)], event, payload);
+      teller.hear(workshopId, event, payload);
+    },
     toPerson: (_workshopId, personId, event, payload) => emit([rooms.person(personId)], event, payload),
     connected: (workshopId) =>
       workshopId === null
         ? io.sockets.sockets.size
-        : [rooms.members(workshopId), rooms.walls(workshopId)].reduce(
-            (sum, room) => sum + (io.sockets.adapter.rooms.get(room)?.size ?? 0),
-            0,
-          ),
+        : sizeOf(rooms.members(workshopId)) + sizeOf(rooms.walls(workshopId)),
     end: (target, reason) => {
       const room =
         'sessionId' in target
@@ -193,6 +196,7 @@ export function makeSocketHub(deps: HubDeps): SocketHub {
       if (timer) clearInterval(timer);
       timer = null;
       await beating;
+      await teller.idle();
       await io.close();
     },
   };

@@ -14,7 +14,9 @@ import { PackBalance1765800000000 } from './1765800000000-pack-balance';
 import { FittedSpare1765810000000 } from './1765810000000-fitted-spare';
 import { BenchPlan1765900000000 } from './1765900000000-bench-plan';
 import { AlertDelivery1767000000000 } from './1767000000000-alert-delivery';
-import { FinishedWaits1767100000000 } from './1767100000000-finished-waits';
+import { ChannelFault1767100000000 } from './1767100000000-channel-fault';
+import { FinishedWaits1767110000000 } from './1767110000000-finished-waits';
+import { WeeklyDigest1767200000000 } from './1767200000000-weekly-digest';
 
 export const migrations = [
   Initial1764600000000,
@@ -32,5 +34,7 @@ export const migrations = [
   FittedSpare1765810000000,
   BenchPlan1765900000000,
   AlertDelivery1767000000000,
-  FinishedWaits1767100000000,
+  ChannelFault1767100000000,
+  FinishedWaits1767110000000,
+  WeeklyDigest1767200000000,
 ];

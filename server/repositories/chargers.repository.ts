@@ -11,6 +11,9 @@ export const findCharger = (manager: EntityManager, workshopId: string, id: stri
 export const findChargerNamed = (manager: EntityManager, workshopId: string, name: string): Promise<Charger | null> =>
   manager.findOneBy(Charger, { workshopId, name });
 
+export const findChannel = (manager: EntityManager, workshopId: string, id: string): Promise<Channel | null> =>
+  manager.findOneBy(Channel, { workshopId, id });
+
 /** All channels, the retired ones too, by name. */
 export const listChannels = (manager: EntityManager, workshopId: string): Promise<Channel[]> =>
   manager.find(Channel, { where: { workshopId }, order: { name: 'ASC' } });

@@ -13,11 +13,13 @@ export async function listBenchCharges(
   manager: EntityManager,
   workshopId: string,
   stoppedSince: number,
+  only?: readonly string[],
 ): Promise<Charge[]> {
+  const which = { workshopId, ...(only ? { id: In([...only]) } : {}) };
   return manager.find(Charge, {
     where: [
-      { workshopId, stage: In([...openStages]) },
-      { workshopId, stage: 'stopped', stoppedAt: MoreThan(stoppedSince) },
+      { ...which, stage: In([...openStages]) },
+      { ...which, stage: 'stopped', stoppedAt: MoreThan(stoppedSince) },
     ],
     order: { number: 'ASC' },
   });

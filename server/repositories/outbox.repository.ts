@@ -1,4 +1,4 @@
-import { Brackets, In, IsNull, LessThan, LessThanOrEqual, Not, type EntityManager } from 'typeorm';
+import { Brackets, In, IsNull, LessThan, LessThanOrEqual, MoreThan, Not, type EntityManager } from 'typeorm';
 import { OutboxEntry } from '../entities/outbox-entry';
 
 export async function insertEntries(manager: EntityManager, entries: readonly OutboxEntry[]): Promise<void> {
@@ -21,6 +21,20 @@ export async function dropWaitingEntries(
       ...(beforeTurn === Infinity ? {} : { turn: LessThan(beforeTurn) }),
     },
     { state: 'dropped', reason, endedAt: now },
+  );
+}
+
+/** What was put off for the quiet hours of a person is looked at anew: they are not what they were. */
+export async function releaseHeld(
+  manager: EntityManager,
+  workshopId: string,
+  personId: string,
+  now: number,
+): Promise<void> {
+  await manager.update(
+    OutboxEntry,
+    { workshopId, personId, state: 'waiting', heldAt: Not(IsNull()), dueAt: MoreThan(now) },
+    { dueAt: now },
   );
 }
 

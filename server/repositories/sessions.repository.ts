@@ -1,4 +1,4 @@
-import { IsNull, MoreThan, Not, type EntityManager } from 'typeorm';
+import { In, IsNull, MoreThan, Not, type EntityManager } from 'typeorm';
 import { Person } from '../entities/person';
 import { Session } from '../entities/session';
 
@@ -12,6 +12,23 @@ export async function findSessionWithPerson(
   if (!session) return null;
   const person = await manager.findOneBy(Person, { workshopId, id: session.personId });
   return person ? { session, person } : null;
+}
+
+/** Sessions of all workshops that are not ended, with their persons, by their ids. Those of no person are left out. */
+export async function sessionsWithPersons(
+  manager: EntityManager,
+  sessionIds: readonly string[],
+): Promise<Map<string, { session: Session; person: Person }>> {
+  if (sessionIds.length === 0) return new Map();
+  const sessions = await manager.findBy(Session, { id: In([...new Set(sessionIds)]), endedAt: IsNull() });
+  const persons = await manager.findBy(Person, { id: In([...new Set(sessions.map(({ personId }) => personId))]) });
+  const byId = new Map(persons.map((person) => [person.id, person]));
+  return new Map(
+    sessions.flatMap((session) => {
+      const person = byId.get(session.personId);
+      return person?.workshopId === session.workshopId ? [[session.id, { session, person }] as const] : [];
+    }),
+  );
 }
 
 /** A session by its id alone, ended or not: the refresh token says no workshop. */

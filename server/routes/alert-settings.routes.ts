@@ -3,6 +3,7 @@ import {
   addPushDevice,
   alertSettings,
   changeAlertSettings,
+  pushKey,
   removePushDevice,
 } from '../services/alert-settings.service';
 import { dropUndelivered, sendAgain, undelivered } from '../services/undelivered.service';
@@ -26,7 +27,7 @@ export const alertSettingsRoutes: RoutesModule = (route) => {
     method: 'get',
     path: '/push-key',
     policy: { kind: 'member' },
-    handle: async ({ deps }) => ({ key: deps.outbox.pushKey }),
+    handle: async ({ deps, member }) => pushKey(deps, member),
   });
   route({
     method: 'post',

@@ -6,6 +6,8 @@ import { boardRoutes } from './board.routes';
 import { chargesRoutes } from './charges.routes';
 import { customersRoutes } from './customers.routes';
 import type { RoutesModule } from './define-route';
+import { demoRoutes } from './demo.routes';
+import { digestRoutes } from './digest.routes';
 import { equipmentRoutes } from './equipment.routes';
 import { healthRoutes } from './health.routes';
 import { metricsRoutes } from './metrics.routes';
@@ -43,7 +45,9 @@ export const routesModules: RoutesModule[] = [
   benchPlanRoutes,
   alertsRoutes,
   alertSettingsRoutes,
+  demoRoutes,
   waitsRoutes,
+  digestRoutes,
   staffingRoutes,
   workRoutes,
 ];

@@ -1,4 +1,5 @@
-import { benchBoard, wallBoard } from '../services/board.service';
+import { benchBoard } from '../services/board.service';
+import { sendBoard } from './send-board';
 import type { RoutesModule } from './define-route';
 
 export const boardRoutes: RoutesModule = (route) => {
@@ -12,6 +13,7 @@ export const boardRoutes: RoutesModule = (route) => {
     method: 'get',
     path: '/wall/board',
     policy: { kind: 'wall' },
-    handle: ({ deps, wall, now }) => wallBoard(deps, wall.workshopId, now),
+    handle: async ({ deps, wall, now, request, response }) =>
+      sendBoard(request, response, await deps.wallBoards.read(wall.workshopId, now)),
   });
 };

@@ -1,10 +1,12 @@
 import {
+  channelFaultSchema,
   chargerSchema,
   meterSchema,
   moduleTypeSchema,
   ownCurveSchema,
   resistorSchema,
 } from '@/shared/contract/equipment';
+import { channelFailed, channelWorks } from '../services/channel-faults.service';
 import { addCharger, changeCharger, charger, chargers, retireCharger } from '../services/chargers.service';
 import { addMeter, changeMeter, meters, removeMeter } from '../services/meters.service';
 import {
@@ -107,6 +109,20 @@ export const equipmentRoutes: RoutesModule = (route) => {
     policy: write,
     ifMatch: true,
     handle: ({ deps, member, params, rev, now }) => retireCharger(deps, member, params.id!, rev, now),
+  });
+
+  route({
+    method: 'post',
+    path: '/channels/:id/fault',
+    policy: { kind: 'capability', capability: 'charge:run' },
+    body: channelFaultSchema,
+    handle: ({ deps, member, params, body, now }) => channelFailed(deps, member, params.id!, body, now),
+  });
+  route({
+    method: 'post',
+    path: '/channels/:id/works',
+    policy: { kind: 'capability', capability: 'charge:assign' },
+    handle: ({ deps, member, params, now }) => channelWorks(deps, member, params.id!, now),
   });
 
   route({ method: 'get', path: '/resistors', policy: read, handle: ({ deps, member }) => resistors(deps, member) });

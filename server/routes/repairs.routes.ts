@@ -37,6 +37,7 @@ import { addPackType, changePackType, packTypes } from '../services/pack-types.s
 import { fitAsItIs } from '../services/repair-fits.service';
 import { freeSpare, reserveSpare } from '../services/repair-spares.service';
 import { takeTarget } from '../services/repair-targets.service';
+import { repairSeason } from '../services/repair-season.service';
 import { repairsCsv } from '../services/repairs-csv.service';
 import { addRepair, changeBooked, repair, repairs } from '../services/repairs.service';
 import { addSecondSource, decideSource } from '../services/second-sources.service';
@@ -92,6 +93,12 @@ export const repairsRoutes: RoutesModule = (route) => {
       response.attachment(file.name).type('text/csv; charset=utf-8');
       await pipeline(file.lines, response);
     },
+  });
+  route({
+    method: 'get',
+    path: '/repairs/:id/season',
+    policy: read,
+    handle: ({ deps, member, params, now }) => repairSeason(deps, member, idOf(params), now),
   });
   route({
     method: 'post',

@@ -6,6 +6,7 @@ import {
   type ChangeAlertSettingsInput,
   type PushDeviceDto,
   type PushDeviceInput,
+  type PushKeyDto,
 } from '@/shared/contract/alert-settings';
 import { isPushEndpoint } from '../alerts/ways/public-address';
 import type { Deps, Member } from '../deps';
@@ -14,6 +15,7 @@ import type { PushDevice } from '../entities/push-device';
 import { conflict, invalid, notFound } from '../errors/domain-error';
 import { alertSettingsOf, saveAlertSetting } from '../repositories/alert-settings.repository';
 import { findPerson } from '../repositories/people.repository';
+import { releaseHeld } from '../repositories/outbox.repository';
 import {
   deletePushDevices,
   findPushDevice,
@@ -43,9 +45,15 @@ export async function alertSettings(deps: Deps, member: Member): Promise<AlertSe
     quiet: quietFrom === null || quietTo === null ? null : { from: quietFrom, to: quietTo },
     alarmsBreakThrough: setting?.alarmsBreakThrough ?? true,
     eMail: { address: person.email, on: deps.outbox.eMail },
-    devices: (await pushDevicesOf(manager, workshopId, [personId])).map((one) => deviceDto(one, member)),
+    devices: (await pushDevicesOf(manager, workshopId, [personId])).map((one) => deviceDto(deps, one, member)),
   };
 }
+
+/** What a browser needs to subscribe; in the demo it is subscribed already, at the push service of the demo. */
+export const pushKey = ({ outbox, outside }: Deps, { sessionId }: Member): PushKeyDto => ({
+  key: outbox.pushKey,
+  demo: outside === null ? null : outside.subscribe(sessionId),
+});
 
 /** Changes what is given and leaves the rest as it is. */
 export async function changeAlertSettings(
@@ -71,17 +79,24 @@ export async function changeAlertSettings(
       changedAt: now,
     };
     await saveAlertSetting(manager, row);
+    if (input.quiet !== undefined || input.alarmsBreakThrough !== undefined)
+      await releaseHeld(manager, workshopId, personId, now);
   });
+  deps.outbox.poke();
   return alertSettings(deps, member);
 }
 
-const deviceDto = (device: PushDevice, member: Member): PushDeviceDto => ({
-  id: device.id,
-  kind: device.kind,
-  name: device.name,
-  addedAt: toInstant(device.createdAt),
-  here: device.sessionId === member.sessionId,
-});
+function deviceDto({ outside }: Deps, device: PushDevice, { sessionId }: Member): PushDeviceDto {
+  // A phone of the demo came with a browser, and is beside it.
+  const lent = outside !== null && device.kind === 'phone' && outside.isPhone(device.address);
+  return {
+    id: device.id,
+    kind: device.kind,
+    name: lent ? 'Phone of the demo' : device.name,
+    addedAt: toInstant(device.createdAt),
+    here: device.sessionId === sessionId && !lent,
+  };
+}
 
 /**
  * Pushes come to this device from now on. One that was somebody else's is theirs no more: who signs in on it last has it.
@@ -125,7 +140,7 @@ export async function addPushDevice(
     );
     await insertPushDevice(manager, device);
   });
-  return deviceDto(device, member);
+  return deviceDto(deps, device, member);
 }
 
 /** Nothing is pushed to this device any more. @throws DomainError 404 where it is none of one's own */

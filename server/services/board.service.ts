@@ -8,24 +8,52 @@ import { listUsableChannels } from '../repositories/chargers.repository';
 import { benchOrder, onTheWall, wallOrder } from './board-order';
 import { chargeCard } from './charge-dto';
 import { STOPPED_ON_BOARD_MS } from './charge-due';
-import { loadBench, loadFiles } from './charge-file';
+import { loadBench, loadFiles, type Bench } from './charge-file';
 import { titleOf } from './charge-words';
 import { toInstant } from './instants';
 import { openingOf } from './working-hours';
 
+/** All of a workshop's charges as they look at an instant, whoever looks, and what they were read with. */
+export interface WholeBoard {
+  board: Omit<BoardDto, 'next'>;
+  bench: Bench;
+}
+
 /** The bench as the people of a workshop see it: all open charges, in the order in which they want a hand. */
 export async function benchBoard(deps: Deps, workshopId: string, now: number): Promise<BoardDto> {
-  const board = await boardOf(deps.dataSource.manager, workshopId, now);
-  return { ...board, charges: benchOrder(board.charges, now) };
+  const { board } = await readBoard(deps.dataSource.manager, workshopId, now);
+  return { ...board, charges: benchOrder(board.charges, now), next: nextPlanned(board.charges) };
 }
 
 /** The board as a wall shows it: without what is only planned or has long been ready, soonest first. */
-export async function wallBoard(deps: Deps, workshopId: string, now: number): Promise<BoardDto> {
-  const board = await boardOf(deps.dataSource.manager, workshopId, now);
-  return { ...board, charges: wallOrder(board.charges.filter((card) => onTheWall(card, now))) };
+export async function wallBoard(deps: Pick<Deps, 'dataSource'>, workshopId: string, now: number): Promise<BoardDto> {
+  return asOnTheWall((await readBoard(deps.dataSource.manager, workshopId, now)).board, now);
 }
 
-async function boardOf(manager: EntityManager, workshopId: string, now: number): Promise<BoardDto> {
+/** What a wall shows of all charges. */
+export const asOnTheWall = (board: WholeBoard['board'], now: number): BoardDto => ({
+  ...board,
+  charges: wallOrder(board.charges.filter((card) => onTheWall(card, now))),
+  next: nextPlanned(board.charges),
+});
+
+/**
+ * Some of the charges as they look now; one that is missing stands on no bench any more.
+ * @param bench what stands around all charges, as it was read with the others
+ */
+export async function readCards(
+  manager: EntityManager,
+  workshopId: string,
+  ids: readonly string[],
+  bench: Bench,
+  now: number,
+): Promise<ChargeCardDto[]> {
+  const rows = await listBenchCharges(manager, workshopId, now - STOPPED_ON_BOARD_MS, ids);
+  return (await loadFiles(manager, workshopId, rows, bench)).map((file) => chargeCard(file, now));
+}
+
+/** All charges on the bench, read from the database. */
+export async function readBoard(manager: EntityManager, workshopId: string, now: number): Promise<WholeBoard> {
   const bench = await loadBench(manager, workshopId);
   const rows = await listBenchCharges(manager, workshopId, now - STOPPED_ON_BOARD_MS);
   const files = await loadFiles(manager, workshopId, rows, bench);
@@ -36,7 +64,7 @@ async function boardOf(manager: EntityManager, workshopId: string, now: number):
       .map(({ hold, charge }) => [hold.channelId, titleOf(charge)]),
   );
   const opening = openingOf(bench.workshop, now);
-  return {
+  const board = {
     rev: bench.workshop.boardRev,
     at: toInstant(now),
     workshop: { id: workshopId, name: bench.workshop.name, zone: bench.workshop.zone },
@@ -47,9 +75,9 @@ async function boardOf(manager: EntityManager, workshopId: string, now: number):
       maxAmps: channel.maxAmps,
       chargeTitle: running.get(channel.id) ?? null,
     })),
-    next: nextPlanned(cards),
     openToday: opening === null ? null : { from: toInstant(opening.from), to: toInstant(opening.to) },
   };
+  return { board, bench };
 }
 
 /** What comes first of what is only planned. */

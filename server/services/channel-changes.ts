@@ -54,6 +54,9 @@ const none = {
   deratingAboveCelsius: null,
   deratingPercent: null,
   dutyPercent: null,
+  faultAt: null,
+  faultSeen: null,
+  faultById: null,
 } satisfies Partial<Channel>;
 
 function presentChannel(own: readonly Channel[], input: ChannelInput, index: number): Channel | undefined {

@@ -1,5 +1,6 @@
 import type { PlannedStep, Refusal } from '@/calc/plan-types';
 import type { Channel } from '../entities/channel';
+import { faultWords, isFaulty } from './channel-fault';
 import type { ChargeFile } from './charge-file';
 import { clipText, groupsText, setVoltsText, upperFirst } from './charge-words';
 
@@ -29,6 +30,7 @@ function problemOf(
 ): string | null {
   if (!channel || channel.retired)
     return `${channel?.name ?? 'Its channel'} is out of use. Plan it again on another channel.`;
+  if (isFaulty(channel)) return `${faultWords(channel)} Plan it on another channel.`;
   if (step.direction === 'discharge')
     return channel.canDischarge ? null : `${channel.name} cannot discharge any more. Plan it on another channel.`;
   if (channel.adjustableVolts) return null;

@@ -21,7 +21,15 @@ import {
   stepSwapText,
   type AlertText,
 } from './charge-alert-texts';
-import { overTemperatureText, overVoltageText, noReadingText, startMissedText, taperText } from './charge-cause-texts';
+import {
+  channelFaultText,
+  noReadingText,
+  overTemperatureText,
+  overVoltageText,
+  startMissedText,
+  taperText,
+} from './charge-cause-texts';
+import { faultsOf } from './channel-fault';
 import { overTemperature, overVoltage, silenceOf, startMissedSince } from './charge-causes';
 import { isChecked, overdueSince, TOLD_AGAIN_MS } from './charge-due';
 import type { ChargeFile } from './charge-file';
@@ -115,6 +123,15 @@ export function wantedAlerts(file: ChargeFile, now: number): Wanted[] {
   // What was missed is told as that; of those due since it the last is still asked for.
   if (lookIn !== null && lookIn !== missed)
     wanted.push({ kind: 'look-in-due', level: 'tell', since: lookIn.dueAt, key: lookIn.id, text: lookInText(file) });
+  for (const fault of faultsOf(file))
+    wanted.push({
+      kind: 'channel-fault',
+      level: fault.flows ? 'alarm' : 'amber',
+      since: fault.channel.faultAt,
+      // Each fault of each channel, and anew where current comes from it meanwhile.
+      key: `${fault.channel.id}-${fault.channel.faultAt}${fault.flows ? '-flows' : ''}`,
+      text: channelFaultText(file, fault, now),
+    });
   if (isUnderWay(charge.stage)) wanted.push(...readingAlerts(file));
   const late = overdueSince(file, now);
   if (late !== null) wanted.push({ kind: 'overdue', level: 'alarm', since: late, text: overdueText(file, now) });
@@ -197,7 +214,7 @@ export async function syncAlerts(
     changes.changed.push(alert.id);
   }
   for (const want of wanted) {
-    if (all.some((one) => one.clearedAt === null && one.kind === want.kind)) continue;
+    if (all.some((one) => one.clearedAt === null && one.kind === want.kind && isCauseOf(want, one))) continue;
     const cause = causeOf(charge.id, want, all);
     if (all.some((one) => one.cause === cause)) continue;
     const personId = await personFor(manager, file, want, now);

@@ -1,9 +1,10 @@
 /** What the alerts say that the rows of a charge call for by themselves (look: §8). */
 import type { AlertText } from './charge-alert-texts';
 import type { OverLimit, OverVoltage, Silence } from './charge-causes';
+import { faultWords, type FaultOfCharge } from './channel-fault';
 import type { ChargeFile } from './charge-file';
 import { channelNamesOf, titleAtChannel } from './charge-steps';
-import { ampsText, celsiusText, cellText, clipText, clockText, listText } from './charge-words';
+import { ampsText, celsiusText, cellText, clipText, clockText, listText, titleOf } from './charge-words';
 
 const stepOf = (file: ChargeFile): number => file.charge.reckoning?.reckoning.stepIndex ?? 0;
 const channelsOf = (file: ChargeFile): string => listText(channelNamesOf(file, stepOf(file)));
@@ -38,6 +39,20 @@ export function noReadingText(file: ChargeFile, silence: Silence, now: number): 
     title: titleAtChannel(file, stepOf(file)),
     seen: `${from} since ${clockText(silence.lastAt, file.workshop.zone, now)}. Look in.`,
     checkFirst: `Warmth and smell, then what ${names === '' ? 'the meter' : names} shows in volts and amps. Log it.`,
+  };
+}
+
+/** Somebody has called a channel out of order that this charge has, or is to have. */
+export function channelFaultText(file: ChargeFile, { channel, flows }: FaultOfCharge, now: number): AlertText {
+  const { name, faultAt, faultById } = channel;
+  const who = file.people.get(faultById ?? '')?.name ?? 'Somebody';
+  const seen = `${faultWords(channel)} ${who} said so at ${clockText(faultAt, file.workshop.zone, now)}.`;
+  return {
+    title: flows ? titleAtChannel(file, stepOf(file)) : titleOf(file.charge),
+    seen,
+    checkFirst: flows
+      ? `That ${name} is off at the charger, then the clips and the module for warmth and smell, then hold or stop the charge.`
+      : `Whether ${name} works again, then plan it on another channel.`,
   };
 }
 

@@ -18,6 +18,7 @@ import type { RestCheck } from '../entities/rest-check';
 import { answersOf, eventsOf } from '../repositories/charge-rows.repository';
 import { chargeNames, findTopUpOf, type ChargeName } from '../repositories/charges.repository';
 import { personRef } from './alert-dto';
+import { channelsOf, faultDto } from './channel-fault';
 import { checkSheet } from './charge-checks';
 import { chargeNow, instantOf, readingInstantOf } from './charge-clock';
 import { overdueSince } from './charge-due';
@@ -169,6 +170,11 @@ export async function chargeDto(
   return {
     ...chargeCard(fresh, now),
     option: charge.option,
+    channels: channelsOf(file).map((channel) => ({
+      id: channel.id,
+      name: channel.name,
+      fault: faultDto(channel, file.people),
+    })),
     moduleTypeId: charge.moduleTypeId,
     shelfPlace: file.spare.shelfPlace,
     meterId: charge.targetMeterId,

@@ -1,7 +1,9 @@
 import type { ChannelDto, ChargerDto } from '@/shared/contract/equipment';
 import type { Channel } from '../entities/channel';
 import type { Charger } from '../entities/charger';
+import type { PersonName } from '../repositories/charge-stock.repository';
 import type { ChannelHolder } from './channel-availability';
+import { faultDto } from './channel-fault';
 import { titleOf } from './charge-words';
 import { toInstant } from './instants';
 
@@ -10,6 +12,7 @@ export function chargerDto(
   charger: Charger,
   channels: readonly Channel[],
   holders: ReadonlyMap<string, ChannelHolder>,
+  people: ReadonlyMap<string, PersonName>,
 ): ChargerDto {
   return {
     id: charger.id,
@@ -18,13 +21,18 @@ export function chargerDto(
     meterId: charger.meterId,
     channels: channels
       .filter((channel) => channel.chargerId === charger.id && !channel.retired)
-      .map((channel) => channelDto(channel, charger, holders.get(channel.id))),
+      .map((channel) => channelDto(channel, charger, holders.get(channel.id), people)),
     retired: charger.retired,
     rev: charger.rev,
   };
 }
 
-const channelDto = (channel: Channel, charger: Charger, holder: ChannelHolder | undefined): ChannelDto => ({
+const channelDto = (
+  channel: Channel,
+  charger: Charger,
+  holder: ChannelHolder | undefined,
+  people: ReadonlyMap<string, PersonName>,
+): ChannelDto => ({
   id: channel.id,
   chargerId: charger.id,
   chargerName: charger.name,
@@ -46,6 +54,7 @@ const channelDto = (channel: Channel, charger: Charger, holder: ChannelHolder | 
   canDischarge: channel.canDischarge,
   dischargeAmps: channel.dischargeAmps,
   loadOhm: channel.loadOhm,
+  fault: faultDto(channel, people),
   heldBy: holder
     ? {
         chargeId: holder.charge.id,

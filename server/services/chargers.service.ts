@@ -11,6 +11,7 @@ import {
   saveChannels,
   saveCharger,
 } from '../repositories/chargers.repository';
+import { peopleById } from '../repositories/charge-stock.repository';
 import { findMeter } from '../repositories/meters.repository';
 import { listOpenHolds } from '../repositories/open-holds.repository';
 import { announceEquipment } from './announce';
@@ -107,13 +108,15 @@ export async function retireCharger(deps: Deps, member: Member, id: string, rev:
 async function dtos(manager: EntityManager, workshopId: string, now: number): Promise<ChargerDto[]> {
   const channels = await listChannels(manager, workshopId);
   const holders = channelHolders(await listOpenHolds(manager, workshopId), now);
-  return (await listChargers(manager, workshopId)).map((row) => chargerDto(row, channels, holders));
+  const people = await peopleById(manager, workshopId);
+  return (await listChargers(manager, workshopId)).map((row) => chargerDto(row, channels, holders, people));
 }
 
 async function dtoOf(manager: EntityManager, workshopId: string, id: string, now: number): Promise<ChargerDto> {
   const row = await known(manager, workshopId, id);
   const channels = await listChannels(manager, workshopId);
-  return chargerDto(row, channels, channelHolders(await listOpenHolds(manager, workshopId), now));
+  const holders = channelHolders(await listOpenHolds(manager, workshopId), now);
+  return chargerDto(row, channels, holders, await peopleById(manager, workshopId));
 }
 
 async function known(manager: EntityManager, workshopId: string, id: string): Promise<Charger> {

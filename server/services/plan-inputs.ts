@@ -21,6 +21,7 @@ import { lastMoveOf } from '../repositories/spare-moves.repository';
 import { findLastSpareReading, findSpare } from '../repositories/spares.repository';
 import { workshopForPlans } from '../repositories/workshop-for-plans.repository';
 import { channelHolders } from './channel-availability';
+import { faultWords, isFaulty } from './channel-fault';
 import { titleOf } from './charge-words';
 import { toInstant } from './instants';
 import { learnedByCharger } from './learned-factors';
@@ -239,6 +240,16 @@ export async function channelsFor(
   const chargerOf = new Map((await listChannels(manager, workshopId)).map(({ id, chargerId }) => [id, chargerId]));
   const learned = await learnedByCharger(manager, workshopId, spare.moduleTypeId, chargerOf);
   for (const { channel, charger } of await listUsableChannels(manager, workshopId)) {
+    if (isFaulty(channel)) {
+      blocked.push({
+        way: 'terminals',
+        finish: 'over-and-settle',
+        channelId: channel.id,
+        channelName: channel.name,
+        reason: `${faultWords(channel)} It is offered again once somebody has said that it works.`,
+      });
+      continue;
+    }
     const holder = holders.get(channel.id);
     if (holder?.freeAt === null) {
       blocked.push({

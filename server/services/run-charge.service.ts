@@ -4,12 +4,13 @@ import type { Deps, Member } from '../deps';
 import { conflict } from '../errors/domain-error';
 import { insertRun, updateRun } from '../repositories/charge-rows.repository';
 import { updateSpare } from '../repositories/charge-stock.repository';
+import { faultWords, isFaulty } from './channel-fault';
 import { chargeCard } from './charge-dto';
 import { actInstant } from './charge-instants';
 import { reckonAt } from './charge-reckoning';
 import { isRunning, isUnderWay, swapWait } from './charge-stages';
 import { wrongStage } from './charge-stage-conflict';
-import { SWAP_REASON, channelNamesOf, handText, nextSwap } from './charge-steps';
+import { SWAP_REASON, begunStep, channelNamesOf, handText, nextSwap, stepsOfSwap } from './charge-steps';
 import { instantOf } from './charge-clock';
 import { markVisit } from './charge-visit';
 import { ampHoursText, bare, durationText, clockText, listText, titleOf } from './charge-words';
@@ -46,6 +47,20 @@ async function beginRun({ manager, file, member }: ChargeWrite, at: number): Pro
   };
   await insertRun(manager, run);
   file.runs.push(run);
+}
+
+/** @throws DomainError 409 where a channel that a step needs is out of order */
+function refuseFaulty({ file, now }: ChargeWrite, first: number): void {
+  const { option } = file.charge;
+  for (const id of stepsOfSwap(option, first).flatMap((index) => option.steps[index]!.channelIds)) {
+    const channel = file.channels.get(id);
+    if (isFaulty(channel))
+      throw conflict(
+        'ruled_out',
+        `${faultWords(channel)} Stop this charge and plan what is left on another channel, or wait until ${channel.name} works again.`,
+        chargeCard(file, now),
+      );
+  }
 }
 
 /** Interrupts a charge whose current flows. It keeps spare and channels. @throws DomainError 409 where nothing flows */
@@ -87,6 +102,7 @@ export function resumeCharge(
     if (charge.stage !== 'held') throw wrongStage(write, 'Only a held charge can be resumed.');
     if (spare.quarantinedAt !== null || spare.condition !== 'sound')
       throw conflict('ruled_out', `${spare.label} is set aside. Stop this charge.`, chargeCard(file, now));
+    refuseFaulty(write, begunStep(charge.option, file.runs));
     const at = actInstant(file, input.at, now, { at: charge.heldAt ?? 0, name: 'the hold' });
     const heldS = (at - (charge.heldAt ?? at)) / 1000;
     await beginRun(write, at);
@@ -113,6 +129,7 @@ export function nextStep(
     const next = nextSwap(charge.option, file.runs);
     if (!isRunning(charge.stage) || next === null) throw wrongStage(write, 'No further step waits.');
     const at = actInstant(file, input.at, now, lastBegin(write));
+    refuseFaulty(write, next);
     const [holder] = await holdersOfStep(write.manager, file, next);
     if (holder) throw await channelTaken(write, holder);
     const wait = swapWait(file);

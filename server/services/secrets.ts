@@ -10,6 +10,10 @@ export interface Secrets {
   refreshKey: Buffer;
   /** Marks the cookie of a device that has signed in. */
   deviceKey: Buffer;
+  /** Marks the link by which a person ends the weekly digest. */
+  digestKey: Buffer;
+  /** From this the browsers of the demo's push service have their keys. */
+  demoKey: Buffer;
 }
 
 /** Derives the keys from the secret. */
@@ -19,6 +23,8 @@ export function secretsFrom(secret: Buffer): Secrets {
     accessKey: createSecretKey(derive('access token')),
     refreshKey: derive('refresh token'),
     deviceKey: derive('known device'),
+    digestKey: derive('weekly digest'),
+    demoKey: derive('browsers of the demo'),
   };
 }
 

@@ -1,8 +1,8 @@
 import type { Deps, Member } from '../deps';
 import type { Person } from '../entities/person';
 import type { Session } from '../entities/session';
-import { findSessionWithPerson } from '../repositories/sessions.repository';
-import { findWall, findWallByTokenHash, updateWall } from '../repositories/walls.repository';
+import { findSessionWithPerson, sessionsWithPersons } from '../repositories/sessions.repository';
+import { findWallByTokenHash, updateWall, wallsById } from '../repositories/walls.repository';
 import { readAccessToken } from './access-token';
 import { sessionIdleMs } from './session-limits';
 import { hashToken } from './tokens';
@@ -58,21 +58,41 @@ export async function wallOf(
   return { id, workshopId };
 }
 
-/** Why somebody who was let in has to go now; null: they may stay. */
-export async function endReasonOf(
+/** Who was let in. */
+export type LetIn = { kind: 'member'; member: Member } | { kind: 'wall'; wall: { id: string; workshopId: string } };
+type EndReason = 'expired' | 'disabled' | 'role-changed' | 'revoked';
+
+/** Why some of those who were let in have to go now; whoever may stay is not in it. One question for all sessions, one for all walls. */
+export async function endReasonsOf(
   deps: Pick<Deps, 'dataSource'>,
-  asker: { kind: 'member'; member: Member } | { kind: 'wall'; wall: { id: string; workshopId: string } },
+  letIn: readonly LetIn[],
   now: number,
-): Promise<'expired' | 'disabled' | 'role-changed' | 'revoked' | null> {
+): Promise<Map<LetIn, EndReason>> {
   const { manager } = deps.dataSource;
-  if (asker.kind === 'wall') {
-    const wall = await findWall(manager, asker.wall.workshopId, asker.wall.id);
-    return wall && wall.revokedAt === null ? null : 'revoked';
-  }
-  const { workshopId, sessionId, role } = asker.member;
-  const found = await findSessionWithPerson(manager, workshopId, sessionId);
-  if (!found) return 'revoked';
-  if (found.person.disabledAt !== null) return 'disabled';
-  if (!sessionHolds(found.session, now)) return 'expired';
-  return found.person.role === role ? null : 'role-changed';
+  const walls = await wallsById(
+    manager,
+    letIn.flatMap((one) => (one.kind === 'wall' ? [one.wall.id] : [])),
+  );
+  const sessions = await sessionsWithPersons(
+    manager,
+    letIn.flatMap((one) => (one.kind === 'member' ? [one.member.sessionId] : [])),
+  );
+  const reasonOf = (one: LetIn): EndReason | null => {
+    if (one.kind === 'wall') {
+      const wall = walls.get(one.wall.id);
+      return wall?.workshopId === one.wall.workshopId && wall.revokedAt === null ? null : 'revoked';
+    }
+    const { workshopId, sessionId, role } = one.member;
+    const found = sessions.get(sessionId);
+    if (!found || found.session.workshopId !== workshopId) return 'revoked';
+    if (found.person.disabledAt !== null) return 'disabled';
+    if (!sessionHolds(found.session, now)) return 'expired';
+    return found.person.role === role ? null : 'role-changed';
+  };
+  return new Map(
+    letIn.flatMap((one): [LetIn, EndReason][] => {
+      const reason = reasonOf(one);
+      return reason === null ? [] : [[one, reason]];
+    }),
+  );
 }

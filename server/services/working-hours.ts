@@ -1,6 +1,8 @@
 import { DateTime } from 'luxon';
 import type { DayHours } from '@/shared/contract/workshop';
 
+const DAY_MS = 86_400_000;
+
 /** Opening and closing (epoch ms) of the day in which `at` lies in the workshop's zone; null: closed that day. */
 export function openingOf(
   workshop: { zone: string; workingHours: DayHours[] },
@@ -31,7 +33,11 @@ export function closesInSeconds(
  * comes twice its first coming: so a stretch of the day keeps its order, and is as long as it is on the wall.
  */
 export function instantOf(day: DateTime, time: string): number {
-  const [hour, minute] = time.split(':').map(Number);
+  const [hour = 0, minute = 0] = time.split(':').map(Number);
+  const midnight = day.toMillis() - ((day.hour * 60 + day.minute) * 60 + day.second) * 1000 - day.millisecond;
+  // A day whose clock does not change, and that is nearly every one, needs no looking for jumps: two years of them add up.
+  if ([midnight, midnight + DAY_MS].every((at) => day.zone.offset(at) === day.offset))
+    return midnight + (hour * 60 + minute) * 60_000;
   const found = day.set({ hour, minute, second: 0, millisecond: 0 });
   if (found.hour !== hour || found.minute !== minute) return jumpBefore(found);
   return Math.min(...found.getPossibleOffsets().map((one) => one.toMillis()));

@@ -16,7 +16,7 @@ const ROWS_AT_ONCE = 500;
 
 /**
  * Of sessions, pairings, devices and sendings: keys that open something, and nothing that anybody has measured or done. The
- * rows of the statistics follow from those of charges, repairs and work.
+ * rows of the statistics follow from those of charges, repairs and work, and digests from them.
  */
 const leftOutTables: ReadonlySet<string> = new Set([
   'session',
@@ -25,6 +25,8 @@ const leftOutTables: ReadonlySet<string> = new Set([
   'idempotency_key',
   'push_device',
   'finished_wait',
+  'weekly_digest',
+  'digest_stop',
 ]);
 /** Columns that open something in whatever table. */
 const leftOutColumn = /password|token|secret|successor|p256dh|^auth$|_key$/;

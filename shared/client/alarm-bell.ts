@@ -73,7 +73,7 @@ const withAlert = (known: AlertDto[], alert: AlertDto): AlertDto[] =>
   known.some(({ id }) => id === alert.id) ? known.map((one) => (one.id === alert.id ? alert : one)) : [alert, ...known];
 
 /** Its person wants it by this page, now. What was not read yet is wanted. */
-function isWanted(alert: AlertDto): boolean {
+function isWanted(alert: Pick<AlertDto, 'kind' | 'level'>): boolean {
   const settings = queryClient.getQueryData(alertSettingsQuery().queryKey);
   const zone = queryClient.getQueryData(sessionQuery().queryKey)?.workshop.zone;
   return !settings || !zone || isHeardHere(settings, alert, zone, serverNow());
@@ -127,7 +127,7 @@ async function tellByNotice(alert: AlertDto, again = false): Promise<void> {
   }
 }
 
-/** One low tone when the rest of one's own charge begins. */
+/** One low tone when the rest of one's own charge begins, where its person wants to hear that current is over. */
 function useRestTone(personId: string | null): void {
   const board = useQuery({ ...boardQuery(), enabled: personId !== null }).data;
   const resting = useRef<ReadonlySet<string> | null>(null);
@@ -135,7 +135,7 @@ function useRestTone(personId: string | null): void {
     if (!board) return;
     const now = board.charges.filter((charge) => charge.stage === 'resting');
     const began = now.some(({ id, person }) => resting.current?.has(id) === false && person?.id === personId);
-    if (began) playSound('resting');
+    if (began && isWanted({ kind: 'charge-done', level: 'tell' })) playSound('resting');
     resting.current = new Set(now.map(({ id }) => id));
   }, [board, personId]);
 }

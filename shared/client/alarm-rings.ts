@@ -22,6 +22,8 @@ const rules: Record<AlertKind, { sound: SoundName; after: readonly number[]; eve
   // Over a limit of its type nothing waits.
   'too-warm': { sound: 'overdue', after: [0], everyMs: minute },
   'over-voltage': { sound: 'overdue', after: [0], everyMs: minute },
+  // Where current flows it is an alarm; heard again where nobody has it.
+  'channel-fault': { sound: 'overdue', after: again },
   // It asks for a look, not for a hand by the minute: heard once.
   'odd-reading': { sound: 'overdue', after: [0] },
   'no-current': { sound: 'overdue', after: [0] },

@@ -23,7 +23,12 @@ export const alertSettingsQuery = () =>
 export const useAlertSettings = (enabled = true) => useQuery({ ...alertSettingsQuery(), enabled });
 
 /** Whether the open page tells an alert at `at` (epoch ms): its person wants it so, and has no quiet hours then. */
-export function isHeardHere(settings: AlertSettingsDto, alert: AlertDto, zone: string, at: number): boolean {
+export function isHeardHere(
+  settings: AlertSettingsDto,
+  alert: Pick<AlertDto, 'kind' | 'level'>,
+  zone: string,
+  at: number,
+): boolean {
   const cause = settings.ways.find(({ kind, level }) => kind === alert.kind && level === alert.level);
   if (cause && !cause.ways.includes('app')) return false;
   return !isHeld(settings, alert.level, zone, at);
@@ -60,5 +65,6 @@ export const useDecideUndelivered = () =>
   useWrite({
     send: ({ id, what }: { id: string; what: 'again' | 'drop' }) =>
       api.post<void>(`/alerts/undelivered/${id}/${what}`, {}),
-    changes: [roots.alerts],
+    // The page of the server counts them.
+    changes: [roots.alerts, roots.status],
   });

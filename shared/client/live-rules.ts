@@ -1,4 +1,5 @@
 /** What becomes old by which announcement. Sockets announce at most once, so a gap in the revisions means: ask for all. */
+import type { WallChangeDto } from '@/shared/contract/board';
 import type { ServerToClientEvents } from '@/shared/contract/live';
 import { roots, type Root } from './query-keys';
 
@@ -12,6 +13,13 @@ export interface LiveRulesEnvironment {
   boardRev: () => number | null;
   /** Revision of a charge in the cache. */
   chargeRev: (id: string) => number | null;
+  /** Of a wall, which has one board and shows it all day. */
+  wall?: {
+    /** Revision of the board on it; null: none, or another is on its way. */
+    shown: () => number | null;
+    /** Puts what changed on its board; false: it has another board, or none. */
+    put: (change: WallChangeDto) => boolean;
+  };
 }
 
 /** Everything that a missed announcement may have changed. */
@@ -39,7 +47,7 @@ export const liveRoots: readonly Root[] = [
   roots.staffing,
 ];
 
-export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment) {
+export function makeLiveRules({ old, boardRev, chargeRev, wall }: LiveRulesEnvironment) {
   let rev: number | null = null;
 
   const resync = () => liveRoots.forEach((root) => old(root));
@@ -60,6 +68,10 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
       if (last !== null && event.rev > last + 1) resync();
       else board();
       if (event.chargeId) old(roots.charge, event.chargeId);
+    },
+    'wall:changed': (event) => {
+      rev = event.rev;
+      if (event.from === null || !wall?.put(event)) old(roots.board);
     },
     'charge:changed': (event) => {
       const known = chargeRev(event.id);
@@ -100,7 +112,8 @@ export function makeLiveRules({ old, boardRev, chargeRev }: LiveRulesEnvironment
     'alert:raised': () => old(roots.alerts),
     'alert:changed': () => old(roots.alerts),
     heartbeat: (event) => {
-      const last = rev ?? boardRev();
+      // What a wall was told and what it shows part ways where its board was asked for before the one and came after it.
+      const last = wall?.shown() ?? rev ?? boardRev();
       // Lower too: the server went back to a copy of its data.
       if (last !== null && last !== event.rev) resync();
       rev = event.rev;

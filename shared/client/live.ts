@@ -4,7 +4,7 @@
  */
 import type { Socket } from 'socket.io-client';
 import type { AlertDto } from '@/shared/contract/alert';
-import type { BoardDto } from '@/shared/contract/board';
+import type { BoardDto, WallChangeDto } from '@/shared/contract/board';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { ClientToServerEvents, ServerToClientEvents } from '@/shared/contract/live';
 import { api, orNull } from './api';
@@ -15,12 +15,14 @@ import { makeLiveRules, type LiveEventName } from './live-rules';
 import { queryClient, waitBefore } from './query-client';
 import { roots, type Root } from './query-keys';
 import { sessionLost } from './session';
+import { withWallChange } from './wall-change';
 
 type LiveSocket = Socket<ServerToClientEvents, ClientToServerEvents>;
 
 /** A record, so that an announcement left out does not compile. */
 const heardOf: Record<LiveEventName, true> = {
   'board:changed': true,
+  'wall:changed': true,
   'charge:changed': true,
   'repair:changed': true,
   'stock:changed': true,
@@ -64,6 +66,17 @@ const cachedBoardRev = (): number | null => {
   return revs.length > 0 ? Math.max(...revs) : null;
 };
 
+const wallKey = [roots.board, 'wall'];
+/** The board on this wall; null while another is on its way, which may be from before what is told now. */
+const boardOnWall = (): BoardDto | null =>
+  queryClient.isFetching({ queryKey: wallKey }) === 0 ? (queryClient.getQueryData<BoardDto>(wallKey) ?? null) : null;
+function putOnWall(change: WallChangeDto): boolean {
+  const board = boardOnWall();
+  const next = board && withWallChange(board, change);
+  if (next) queryClient.setQueryData(wallKey, next);
+  return next !== null;
+}
+
 /** Asks the server for its time over the socket, with the four time-stamps. */
 const askOver = (socket: LiveSocket) => async () => {
   const sentAt = Date.now();
@@ -76,6 +89,7 @@ function listen(socket: LiveSocket, as: 'member' | 'wall', ended: () => void): (
     old: makeOld(),
     boardRev: cachedBoardRev,
     chargeRev: (id) => queryClient.getQueryData<ChargeDto>([roots.charge, id])?.rev ?? null,
+    ...(as === 'wall' ? { wall: { shown: () => boardOnWall()?.rev ?? null, put: putOnWall } } : {}),
   });
   let before = false;
   let failures = 0;

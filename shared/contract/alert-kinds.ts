@@ -16,6 +16,7 @@ export const alertKinds = [
   'no-current',
   'too-warm',
   'over-voltage',
+  'channel-fault',
   'wall-unseen',
 ] as const;
 export type AlertKind = (typeof alertKinds)[number];
@@ -36,6 +37,7 @@ export const alertKindNames: Record<AlertKind, string> = {
   'no-current': 'No current',
   'too-warm': 'Too warm',
   'over-voltage': 'Over the voltage limit',
+  'channel-fault': 'Channel out of order',
   'wall-unseen': 'Wall not seen',
 };
 

@@ -28,6 +28,7 @@ const levelsOf: Record<AlertKind, readonly AlertLevel[]> = {
   'no-current': ['alarm'],
   'too-warm': ['alarm'],
   'over-voltage': ['alarm'],
+  'channel-fault': ['amber', 'alarm'],
   'wall-unseen': ['tell'],
 };
 
@@ -147,6 +148,8 @@ export type PushDeviceInput = z.infer<typeof pushDeviceSchema>;
 /** The key by which a browser's push service knows this server. */
 export interface PushKeyDto {
   key: string;
+  /** In the demo: what the browser would have got from its maker's service. Null: it asks that one. */
+  demo: { endpoint: string; keys: { p256dh: string; auth: string } } | null;
 }
 
 /** An alert that could not be brought to somebody: a manager decides. */

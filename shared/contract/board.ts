@@ -20,3 +20,16 @@ export interface BoardDto {
   /** Night dimming of the wall outside these hours today; null: closed today. */
   openToday: { from: Instant; to: Instant } | null;
 }
+
+/**
+ * What a wall's board shows otherwise than it did at the revision `from`. A wall that has another one reads its board anew.
+ */
+export interface WallChangeDto extends Omit<BoardDto, 'charges' | 'channels'> {
+  from: number;
+  /** Charges that are new or that look otherwise. */
+  cards: ChargeCardDto[];
+  /** Ids of all charges in their order; null: they stand as they stood. */
+  order: string[] | null;
+  /** Null: as they were. */
+  channels: BoardChannelDto[] | null;
+}

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import type { ChannelFaultDto } from './equipment';
 import { id, instant, optionalText, reason, text, type Instant, type PersonRef } from './common';
 import type { OddSeen, Reckoning } from '@/calc/live-types';
 import type { Band, CheckVerdict, Direction, Finish, PlanOption, SegmentKind, Way } from './plan';
@@ -282,6 +283,8 @@ export interface ChargeLink {
 
 export interface ChargeDto extends ChargeCardDto {
   option: PlanOption;
+  /** Channels it has or is to have, in the order of their names. */
+  channels: { id: string; name: string; fault: ChannelFaultDto | null }[];
   moduleTypeId: string;
   shelfPlace: string | null;
   /** Meter the pack was read with, and at which temperature: a top-up is planned with both again. */

@@ -1,6 +1,6 @@
 import * as z from 'zod/mini';
 import type { OcvTable } from '@/calc/types';
-import { optionalInstant, optionalText, text, type Instant } from './common';
+import { optionalInstant, optionalText, text, type Instant, type PersonRef } from './common';
 import { optionalQuantity, quantity } from './quantity';
 
 export const chemistryIds = ['nmc', 'lmo-blend', 'lfp', 'lto', 'nimh'] as const;
@@ -180,10 +180,21 @@ export const chargerSchema = z.object({
 });
 export type ChargerInput = z.infer<typeof chargerSchema>;
 
+/** Somebody has called a channel out of order. */
+export interface ChannelFaultDto {
+  at: Instant;
+  seen: string;
+  by: PersonRef | null;
+}
+export const channelFaultSchema = z.object({ seen: text('What was seen', 200) });
+export type ChannelFaultInput = z.infer<typeof channelFaultSchema>;
+
 export interface ChannelDto extends Required<Omit<ChannelInput, 'id'>> {
   id: string;
   chargerId: string;
   chargerName: string;
+  /** Null: nobody has said that it is out of order. */
+  fault: ChannelFaultDto | null;
   /** Charge that holds it now, and from when it is free. */
   heldBy: { chargeId: string; title: string; stage: string; freeAt: Instant | null } | null;
 }

@@ -1,9 +1,12 @@
 import type { AlertDto } from './alert';
+import type { WallChangeDto } from './board';
 import type { Instant } from './common';
 
 /** Sockets announce; they never carry a write. Every event says the board revision it belongs to. */
 export interface ServerToClientEvents {
   'board:changed': (event: { rev: number; at: Instant; chargeId: string | null }) => void;
+  /** To walls, in place of all that is said of charges and channels: every wall would read the same board for it. */
+  'wall:changed': (event: WallChangeDto | { from: null; rev: number }) => void;
   'charge:changed': (event: { id: string; rev: number; at: Instant }) => void;
   'repair:changed': (event: { id: string; rev: number; at: Instant }) => void;
   'stock:changed': (event: { at: Instant }) => void;

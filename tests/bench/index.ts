@@ -7,7 +7,9 @@ import { benchCandidates } from './candidates';
 import { benchFirstLoad } from './first-load';
 import { benchLive } from './live';
 import { benchPlan } from './plan';
+import { benchReplay } from './replay';
 import { benchStep } from './step';
+import { benchWaits } from './waits';
 
 /** Under a minute together. */
 const quick = {
@@ -16,10 +18,11 @@ const quick = {
   live: benchLive,
   'bench-plan': benchBenchPlan,
   candidates: benchCandidates,
+  replay: benchReplay,
   'first-load': benchFirstLoad,
 };
 /** Minutes each, and so only by name. */
-const slow = { calibration: benchCalibration, alarms: benchAlarms };
+const slow = { calibration: benchCalibration, alarms: benchAlarms, waits: benchWaits };
 const benches: Record<string, () => AsyncIterable<string> | Promise<string[]>> = { ...quick, ...slow };
 
 const asked = process.argv.slice(2);

@@ -67,6 +67,7 @@ const screens = [
     'limits',
     'hours',
     'walls',
+    'server',
   ].map((section) => `/workshop?section=${section}`),
   '/workshop/people/demo-bram',
   '/workshop/staffing/demo-bram',
@@ -89,6 +90,7 @@ const screens = [
   '/more',
   '/me',
   '/me/alerts',
+  '/demo/mailbox',
 ] as const;
 
 /** What a foreman or a technician sees otherwise than a manager, who is shown all: what the role opens, locks or hides. */
@@ -123,6 +125,7 @@ const ofRole: Record<Exclude<Role, 'manager'>, readonly (typeof screens)[number]
     '/workshop/limits',
     '/approve',
     '/more',
+    '/demo/mailbox',
   ],
 };
 

@@ -6,12 +6,14 @@ import { SpareCapacity } from '@/server/entities/spare-capacity';
 import { OutboxEntry } from '@/server/entities/outbox-entry';
 import { PushDevice } from '@/server/entities/push-device';
 import { makeSleeper } from '@/server/live/sleeper-loop';
+import { digestToken } from '@/server/services/waits/digest-letter';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { ChargerDto, MeterDto, ModuleTypeDto, ResistorDto } from '@/shared/contract/equipment';
 import type { OneUseLinkDto } from '@/shared/contract/people';
 import type { PlanDto } from '@/shared/contract/plan';
 import type { SpareDto } from '@/shared/contract/spare';
 import type { WallCodeDto, WallDto } from '@/shared/contract/wall';
+import { addBrokenChannel } from './broken-channel';
 import { channelForm, chargerForm, moduleTypeForm, planForm, readingForm, spareForm } from './forms';
 import { addBench, type Benched } from './benched';
 import { addRepairs, type Repaired } from './repaired';
@@ -28,6 +30,8 @@ export interface Furnished {
   resistorId: string;
   chargerId: string;
   channelId: string;
+  /** Out of order, of a charger that nothing is planned on. */
+  faultyChannelId: string;
   /** A spare in a charge that runs, with a reading, for the technician. */
   chargedSpareId: string;
   chargeId: string;
@@ -52,6 +56,8 @@ export interface Furnished {
   bench: Benched;
   /** A capacity of the spare on the shelf that waits for an answer. */
   capacityId: string;
+  /** Ends the manager's weekly digest. */
+  digestToken: string;
   /** A calculation over the waits. */
   replayId: string;
   invitationId: string;
@@ -72,6 +78,7 @@ export const idsOf = (furnished: Furnished): string[] => [
   furnished.resistorId,
   furnished.chargerId,
   furnished.channelId,
+  furnished.faultyChannelId,
   furnished.chargedSpareId,
   furnished.chargeId,
   furnished.readingId,
@@ -280,6 +287,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     name,
     workshop,
     ...ids,
+    faultyChannelId: await addBrokenChannel(technician, manager, name, ids.meterId),
     restedRev: rev,
     chargeId,
     chargeRev: charge.rev,
@@ -292,6 +300,7 @@ async function finish(server: TestServer, begun: Awaited<ReturnType<typeof begin
     repairs,
     bench,
     replayId: replay.id,
+    digestToken: digestToken(server.deps.secrets, workshop.people.manager.id),
     invitationId: invitation?.id ?? '',
     invitationToken: new URL(url).searchParams.get('token') ?? '',
     ...(await addWall(server, server.agentFor('foreman', workshop), `${name}’s hall`)),

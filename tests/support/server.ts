@@ -27,6 +27,8 @@ import type { Passwords } from '@/server/services/passwords';
 import { secretsFrom } from '@/server/services/secrets';
 import { solveWaits } from '@/server/services/waits/solve-waits';
 import { makeWaitsSolver } from '@/server/services/waits/waits-solver';
+import { wallBoard } from '@/server/services/board.service';
+import { makeWallBoards, type WallBoards } from '@/server/services/wall-boards';
 import { defaultSettings } from '@/server/services/workshop-defaults';
 import { roles, type Role } from '@/shared/contract/roles';
 
@@ -62,12 +64,16 @@ export interface RecordingHub extends LiveHub {
   of(event: LiveEvent | 'end'): unknown[];
 }
 
-export function makeRecordingHub(): RecordingHub {
+/** @param wallBoards hears what was committed, as the real hub tells it */
+export function makeRecordingHub(wallBoards?: Pick<WallBoards, 'changed'>): RecordingHub {
   const told: Announcement[] = [];
   return {
     told,
     of: (event) => told.filter((entry) => entry.event === event).map((entry) => entry.payload),
-    toWorkshop: (workshopId, event, payload) => void told.push({ workshopId, event, payload }),
+    toWorkshop: (workshopId, event, payload) => {
+      wallBoards?.changed(workshopId);
+      told.push({ workshopId, event, payload });
+    },
     toPerson: (workshopId, personId, event, payload) => void told.push({ workshopId, personId, event, payload }),
     connected: () => 0,
     end: (target, reason) => void told.push({ event: 'end', payload: { ...target, reason } }),
@@ -235,9 +241,10 @@ export const makeAgent = (app: Express, cookie: () => string): TestAgent => ({
 /** A running application for one test file or one test. Close it afterwards. */
 export async function makeTestServer(options: TestServerOptions = {}): Promise<TestServer> {
   const clock = makeTestClock(options.now);
-  const hub = makeRecordingHub();
   const passwords = makeCountingPasswords();
   const dataSource = await makeDataSource(':memory:').initialize();
+  const wallBoards = makeWallBoards((workshopId, now) => wallBoard({ dataSource }, workshopId, now));
+  const hub = makeRecordingHub(wallBoards);
   await dataSource.runMigrations();
   const dataDir = newDataDir();
   const config: Config = { ...testConfig, dataDir, demo: options.demo ?? false, ...options.config };
@@ -247,6 +254,7 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     config,
     log: makeLog('silent'),
     hub,
+    wallBoards,
     sleeper: { poke: () => {} },
     outbox: { poke: () => {}, pushKey: 'BKey', eMail: false },
     lifecycle: { ready: true, startedAt: clock.now() },
@@ -258,6 +266,7 @@ export async function makeTestServer(options: TestServerOptions = {}): Promise<T
     limits: makeLimits(options.limits),
     backups: makeBackups({ dataDir, everyHours: 0, clock, log: makeLog('silent') }),
     metrics,
+    outside: null,
     ...options.deps,
   };
   const none = { id: '', people: {} as TestWorkshop['people'] };

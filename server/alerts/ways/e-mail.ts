@@ -1,6 +1,6 @@
-import { createTransport } from 'nodemailer';
+import { createTransport, type SendMailOptions } from 'nodemailer';
 import type { Message } from '../message';
-import { letterOf } from './letter';
+import { letterOf, type Letter } from './letter';
 import { reasonOf, type Sent } from './way';
 
 export interface MailSettings {
@@ -12,6 +12,8 @@ export interface MailSettings {
 
 export interface EMail {
   send(address: string, message: Message): Promise<Sent>;
+  /** A letter that is no alert; `id` is the same however often it is tried, `stopUrl` ends such letters without asking. */
+  sendLetter(address: string, letter: Letter & { id: string; stopUrl: string | null }): Promise<Sent>;
   close(): void;
 }
 
@@ -30,28 +32,42 @@ export function makeEMail({ url, from }: MailSettings, site: string | null): EMa
     greetingTimeout: TIMEOUT_MS,
     socketTimeout: TIMEOUT_MS,
   });
+  const deliver = async (mail: SendMailOptions): Promise<Sent> => {
+    try {
+      await transport.sendMail({ from, ...mail });
+      return { kind: 'sent' };
+    } catch (error) {
+      const { responseCode } = error as { responseCode?: number };
+      // 5xx: this mailbox or this letter never. What fails before that (sign-in, connection) may be put right.
+      const lasting = responseCode !== undefined && responseCode >= 550 && responseCode < 560;
+      return { kind: lasting ? 'refused' : 'failed', reason: reasonOf(error) };
+    }
+  };
+  const automatic = { 'Auto-Submitted': 'auto-generated' };
   return {
-    async send(address, message) {
-      const id = `${message.alertId}.${message.turn}@${domainOf(from)}`;
-      try {
-        await transport.sendMail({
-          from,
-          to: address,
-          ...letterOf(message, site),
-          // A mailbox shows a letter with the same id once; those of one alert stand together.
-          messageId: `<${id}>`,
-          references: `<${message.alertId}@${domainOf(from)}>`,
-          priority: message.level === 'alarm' ? 'high' : 'normal',
-          headers: { 'Auto-Submitted': 'auto-generated' },
-        });
-        return { kind: 'sent' };
-      } catch (error) {
-        const { responseCode } = error as { responseCode?: number };
-        // 5xx: this mailbox or this letter never. What fails before that (sign-in, connection) may be put right.
-        const lasting = responseCode !== undefined && responseCode >= 550 && responseCode < 560;
-        return { kind: lasting ? 'refused' : 'failed', reason: reasonOf(error) };
-      }
-    },
+    send: (address, message) =>
+      deliver({
+        to: address,
+        ...letterOf(message, site),
+        // A mailbox shows a letter with the same id once; those of one alert stand together.
+        messageId: `<${message.alertId}.${message.turn}@${domainOf(from)}>`,
+        references: `<${message.alertId}@${domainOf(from)}>`,
+        priority: message.level === 'alarm' ? 'high' : 'normal',
+        headers: automatic,
+      }),
+    sendLetter: (address, { id, stopUrl, ...letter }) =>
+      deliver({
+        to: address,
+        ...letter,
+        messageId: `<${id}@${domainOf(from)}>`,
+        headers: {
+          ...automatic,
+          // RFC 8058: the mail program's own button for it.
+          ...(stopUrl === null
+            ? {}
+            : { 'List-Unsubscribe': `<${stopUrl}>`, 'List-Unsubscribe-Post': 'List-Unsubscribe=One-Click' }),
+        },
+      }),
     close: () => transport.close(),
   };
 }

@@ -1,6 +1,7 @@
 /** Charges in the lanes of their channels. */
 import type { PlanChannelDto, PlanChargeDto } from '@/shared/contract/bench-plan';
 import type { Channel } from '../../entities/channel';
+import { isFaulty } from '../channel-fault';
 import { chargeCard } from '../charge-dto';
 import type { ChargeFile } from '../charge-file';
 import { isWaitingToStart } from '../charge-stages';
@@ -11,8 +12,10 @@ import { hasTime, type BenchGround } from './ground';
 import { heldSpans } from './held-spans';
 import { overlaps } from './spans';
 
-/** '10 A', 'two-way 10 A', 'one group 5 A' */
-export function kindOf({ maxAmps, canDischarge, singleGroup }: Channel): string {
+/** '10 A', 'two-way 10 A', 'one group 5 A', 'out of order' */
+export function kindOf(channel: Channel): string {
+  if (isFaulty(channel)) return 'out of order';
+  const { maxAmps, canDischarge, singleGroup } = channel;
   const kind = canDischarge ? 'two-way ' : singleGroup ? 'one group ' : '';
   return `${kind}${plainAmpsText(maxAmps)}`;
 }
@@ -20,7 +23,8 @@ export function kindOf({ maxAmps, canDischarge, singleGroup }: Channel): string 
 /** Channels with when each is likely free; one whose charge is held back is free nobody knows when. */
 export function planChannels({ channels, files, now }: BenchGround): PlanChannelDto[] {
   return channels.map((channel) => {
-    let freeAt: number | null = now;
+    // Nobody knows when it works again.
+    let freeAt: number | null = isFaulty(channel) ? null : now;
     for (const file of files)
       for (const span of heldSpans(file, now)) {
         // What is only planned or queued has the channel later: it is free until then.

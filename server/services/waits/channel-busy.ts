@@ -1,3 +1,4 @@
+import { DateTime } from 'luxon';
 import type { EntityManager } from 'typeorm';
 import { openBetween } from '@/calc/index';
 import type { ChannelBusyDto } from '@/shared/contract/waits';
@@ -30,8 +31,7 @@ export async function channelsBusy(
     return [{ channel, charger, own, retired, since: Math.max(fromAt, since) }];
   });
   const first = rows.reduce((least, { since }) => Math.min(least, since), toAt);
-  const spans = presentSpans(workshop, null, first, toAt);
-  const open = openBetween(spans.map(({ from, to }) => ({ fromMinutes: from, toMinutes: to })));
+  const open = openOf(workshop, first, toAt);
   return rows.map(({ channel, charger, own, retired, since }) => {
     const openMs = open(since, toAt);
     const busyMs = own.reduce((sum, [from, to]) => sum + open(from, to), 0);
@@ -40,4 +40,24 @@ export async function channelsBusy(
       ...{ busyHours: hours(busyMs), openHours: hours(openMs), share: openMs > 0 ? busyMs / openMs : null },
     };
   });
+}
+
+/** Working hours between two instants, ms, of the last workshops that were asked for: two years of days take a while. */
+const kept = new Map<string, ReturnType<typeof openBetween>>();
+const MOST_KEPT = 60;
+
+/** Of whole days, so that the same is asked for all day. */
+function openOf({ zone, workingHours }: Workshop, from: number, to: number): ReturnType<typeof openBetween> {
+  const [first, last] = [from, to].map((at) => DateTime.fromMillis(at, { zone }));
+  const [begin, end] = [first!.startOf('day').toMillis(), last!.endOf('day').toMillis() + 1];
+  const key = JSON.stringify([zone, workingHours, begin, end]);
+  const known = kept.get(key);
+  if (known) return known;
+  const spans = presentSpans({ zone, workingHours }, null, begin, end);
+  // An instant is a minute to it: it only adds lengths up.
+  const open = openBetween(spans.map((span) => ({ fromMinutes: span.from, toMinutes: span.to })));
+  const [oldest] = kept.keys();
+  if (kept.size >= MOST_KEPT && oldest !== undefined) kept.delete(oldest);
+  kept.set(key, open);
+  return open;
 }

@@ -1,5 +1,5 @@
 import type { EntityManager } from 'typeorm';
-import type { WaitDimension, waitWays } from '@/shared/contract/waits';
+import type { WaitDimension, WaitStage, waitWays } from '@/shared/contract/waits';
 import { listChannels, listChargers } from '../../repositories/chargers.repository';
 import { listModuleTypes } from '../../repositories/module-types.repository';
 import { personRefs } from '../../repositories/person-refs.repository';
@@ -12,6 +12,14 @@ export const wayNames: Record<(typeof waitWays)[number], string> = {
   'group-by-group': 'Group by group',
   paralleled: 'Groups paralleled',
   resistor: 'Through a resistor',
+};
+
+export const stageNames: Record<WaitStage, string> = {
+  queue: 'Queue',
+  charging: 'Charging',
+  tapering: 'Tapering',
+  resting: 'Resting',
+  'check-due': 'Check due',
 };
 
 export type WaitNames = Record<WaitDimension, (key: string) => string>;

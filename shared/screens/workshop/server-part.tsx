@@ -3,8 +3,10 @@ import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { useNow } from '@/shared/client/clock';
 import { useGate } from '@/shared/client/gate';
+import { useLink } from '@/shared/client/link';
 import { partState } from '@/shared/client/part-state';
 import { useBackUp, useExport, useStatus } from '@/shared/client/status';
+import { UndeliveredPart } from '@/shared/screens/alerts/undelivered-part';
 import { ProblemLine } from '@/shared/ui/auth/problem-line';
 import { dayOf } from '@/shared/ui/format/zone';
 import { useFormats } from '@/shared/ui/format/formats';
@@ -36,6 +38,7 @@ export function ServerPart({ titled }: PartProps) {
 }
 
 function ServerFacts({ titled }: PartProps) {
+  const offline = useLink().state === 'down';
   const now = useNow(30_000);
   const { zone } = useFormats();
   const toast = useToast();
@@ -60,6 +63,7 @@ function ServerFacts({ titled }: PartProps) {
               <Txt bold>{warning}</Txt>
             </CallOut>
           ) : null}
+          {status.data.outbox.dead > 0 ? <UndeliveredPart now={now} offline={offline} /> : null}
           <StatusFacts status={status.data} now={now} />
           <CopiesTable status={status.data} now={now} />
           <ProblemLine text={backUp.error ? sentenceOf(backUp.error) : null} />

@@ -25,6 +25,7 @@ const marks: Record<AlertKind, StageMark> = {
   'no-current': 'overdue',
   'too-warm': 'overdue',
   'over-voltage': 'overdue',
+  'channel-fault': 'overdue',
   'wall-unseen': 'stopped',
 };
 export const lookOf = (alert: AlertDto): AlertLook => ({ mark: marks[alert.kind], word: alertKindNames[alert.kind] });

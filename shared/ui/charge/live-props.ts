@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import type { PlanOption } from '@/calc/plan-types';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { MeterDto, ModuleTypeDto } from '@/shared/contract/equipment';
@@ -19,6 +20,8 @@ export interface LiveScreenProps {
   /** Of the workshop: a reading names the one it was read with. */
   meters: readonly Pick<MeterDto, 'id' | 'name'>[];
   mayHandOver: boolean;
+  /** Channels out of order, and the way to say so. */
+  channels: ReactNode;
   acts: ChargeActs;
   sheet: LiveSheet | null;
   stopDraft: LiveSheetsProps['stopDraft'];

@@ -53,6 +53,7 @@ export function LiveWork(props: LiveScreenProps) {
       <Drift {...props} />
       <WhileOffline {...props} />
       {charge.odd ? <OddSeenCallOut odd={charge.odd} charge={charge} now={at.now} /> : null}
+      {props.channels}
       <Asks {...props} />
       <Outcome {...props} />
       {isOver(charge) ? null : <Emergency charge={charge} chemistry={props.type?.chemistry ?? null} />}

@@ -7,6 +7,6 @@ const createElement = untyped as (tag: string, props: object) => ReactElement;
 
 /** A DOM element with React Native styles and accessibility props. Web only; for controls the browser does best. */
 export const domElement = (
-  tag: 'select' | 'option' | 'input' | 'a' | 'img',
+  tag: 'select' | 'option' | 'input' | 'a' | 'img' | 'iframe',
   props: Record<string, unknown> & { children?: ReactNode; key?: string },
 ): ReactElement => createElement(tag, props);

@@ -27,7 +27,7 @@ export function placeOf(path: string): Place {
   const first = bare.split('/')[1] ?? '';
   const rail =
     (['bench-plan', 'repairs', 'spares', 'alerts', 'waits', 'workshop', 'more'] as const).find(
-      (key) => key === (first === 'me' || first === 'work' ? 'more' : first),
+      (key) => key === (['me', 'work', 'demo'].includes(first) ? 'more' : first),
     ) ?? 'bench';
   return { tab: tabs[bare] ?? null, rail };
 }

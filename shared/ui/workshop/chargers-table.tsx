@@ -28,13 +28,24 @@ export function ChargersTable({
   meters,
   now,
   mayChange,
+  mayFail,
+  mayClear,
+  disabled,
   onEdit,
+  onFailed,
+  onWorks,
 }: {
   chargers: readonly ChargerDto[];
   meters: readonly MeterDto[];
   now: number;
   mayChange: boolean;
+  /** May say that a channel is out of order; that it works again. */
+  mayFail: boolean;
+  mayClear: boolean;
+  disabled: boolean;
   onEdit: (charger: ChargerDto) => void;
+  onFailed: (channel: ChannelDto) => void;
+  onWorks: (channel: ChannelDto) => void;
 }) {
   const { zone, marks } = useFormats();
   // On the tablet the room goes to who has a channel now.
@@ -87,20 +98,39 @@ export function ChargersTable({
           title: 'Now',
           phone: 'detail',
           share: 1,
-          cell: (row) =>
-            row.heldBy ? (
-              row.heldBy.stage in stages ? (
-                <StageTag
-                  stage={row.heldBy.stage as StageMark}
-                  text={`${stages[row.heldBy.stage as StageMark].word}, ${row.heldBy.title}`}
-                />
-              ) : (
-                row.heldBy.title
-              )
-            ) : (
-              <Txt tone="ink2">free</Txt>
-            ),
+          cell: (row) => <Now row={row} />,
         },
+        ...(mayFail || mayClear
+          ? [
+              {
+                key: 'order',
+                title: 'Order',
+                quietTitle: true,
+                phone: 'detail' as const,
+                width: 92,
+                cell: (row: Row) =>
+                  row.fault === null && mayFail ? (
+                    <Link
+                      tight
+                      kind="small"
+                      title="out of order"
+                      label={`${row.name} is out of order`}
+                      disabled={disabled}
+                      onPress={() => onFailed(row)}
+                    />
+                  ) : row.fault !== null && mayClear ? (
+                    <Link
+                      tight
+                      kind="small"
+                      title="works again"
+                      label={`${row.name} works again`}
+                      disabled={disabled}
+                      onPress={() => onWorks(row)}
+                    />
+                  ) : null,
+              },
+            ]
+          : []),
         ...(mayChange
           ? [
               {
@@ -126,5 +156,17 @@ export function ChargersTable({
           : []),
       ]}
     />
+  );
+}
+
+/** Who has it now, or what is wrong with it. */
+function Now({ row }: { row: Row }) {
+  if (row.fault) return <StageTag stage="overdue" text={`out of order: ${row.fault.seen}`} />;
+  if (!row.heldBy) return <Txt tone="ink2">free</Txt>;
+  const { stage, title } = row.heldBy;
+  return stage in stages ? (
+    <StageTag stage={stage as StageMark} text={`${stages[stage as StageMark].word}, ${title}`} />
+  ) : (
+    <Txt>{title}</Txt>
   );
 }

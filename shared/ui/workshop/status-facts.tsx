@@ -62,15 +62,10 @@ export function StatusFacts({ status, now }: { status: StatusDto; now: number })
           ? [{ name: 'Charges that wait for the server', value: String(status.overdueLooks) }]
           : []),
         { name: 'Alerts on their way out', value: String(status.outbox.waiting) },
-        ...(status.outbox.dead > 0
-          ? [
-              {
-                name: 'Alerts that could not be brought',
-                value: String(status.outbox.dead),
-                note: 'listed under Alerts',
-              },
-            ]
-          : []),
+        {
+          name: 'Alerts that could not be brought',
+          value: String(status.outbox.dead),
+        },
         {
           name: 'Newest copy of the data',
           value: newest ? moment(Date.parse(newest.at), zone, now, marks) : 'none yet',

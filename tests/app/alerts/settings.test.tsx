@@ -69,7 +69,7 @@ function open(more: Partial<AlertSettingsDto> = {}) {
     settings = { ...settings, ...change, ways };
     return Response.json(settings);
   };
-  server.answers['GET /api/push-key'] = () => Response.json({ key: 'BAECAwQ' });
+  server.answers['GET /api/push-key'] = () => Response.json({ key: 'BAECAwQ', demo: null });
   draw(<AlertSettings />);
 }
 const row = (name: RegExp) => screen.findByRole('button', { name });
@@ -202,6 +202,30 @@ describe('push to this device', () => {
     fireEvent.click(await press('Stop pushes here'));
     await press('Send pushes here');
     expect(subscribed()).toBe(false);
+  });
+
+  it('in the demo is one of the demo’s own service: that of the browser’s maker is neither asked nor told', async () => {
+    const { asked, subscribed } = browser();
+    open();
+    const demo = { endpoint: 'https://push.example.com/demo', keys: { p256dh: 'B'.repeat(87), auth: 'a'.repeat(22) } };
+    server.answers['GET /api/push-key'] = () => Response.json({ key: 'BAECAwQ', demo });
+    server.answers['POST /api/me/push-devices'] = () => {
+      const device = { id: 'd1', kind: 'browser', name: 'Here', addedAt: '2026-06-09T08:00:00Z', here: true } as const;
+      settings = { ...settings, devices: [device] };
+      return Response.json(device, { status: 201 });
+    };
+    server.answers['DELETE /api/me/push-devices/d1'] = () => {
+      settings = { ...settings, devices: [] };
+      return new Response(null, { status: 204 });
+    };
+    fireEvent.click(await press('Send pushes here'));
+    fireEvent.click(await press('Stop pushes here'));
+    await press('Send pushes here');
+    expect([asked, subscribed()]).toEqual([[], false]);
+    expect(server.writes()).toMatchObject([
+      { path: '/api/me/push-devices', body: { kind: 'browser', ...demo } },
+      { method: 'DELETE', path: '/api/me/push-devices/d1' },
+    ]);
   });
 
   it('that the browser’s service refuses says so, and nothing is sent to the server', async () => {

@@ -3,6 +3,7 @@ import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import Workshop from '@/app/(workshop)/workshop/index';
 import { roles, type Role } from '@/shared/contract/roles';
+import type { UndeliveredDto } from '@/shared/contract/alert-settings';
 import type { StatusDto } from '@/shared/contract/status';
 import { pressFrom } from '../../support/press';
 import { draw, emptyDevice } from '../charges/bench-of';
@@ -41,6 +42,17 @@ const status: StatusDto = {
   sockets: 4,
   overdueLooks: 0,
   outbox: { waiting: 0, dead: 0 },
+};
+
+const undelivered: UndeliveredDto = {
+  id: 'u1',
+  alert: { id: 'a1', kind: 'check-due', level: 'amber', title: 'R-2409 at A1' },
+  person: { id: 'p2', name: 'Hella Brandt' },
+  way: 'e-mail',
+  tries: 12,
+  reason: 'Connection timeout.',
+  at: '2026-06-09T11:42:00Z',
+  open: true,
 };
 
 let server: ReturnType<typeof fakeServer>;
@@ -131,6 +143,26 @@ describe('the server', () => {
     await waitFor(() => expect(server.writes().map(({ path }) => path)).toEqual(['/api/status/backup']));
     // What is shown is asked for again.
     await waitFor(() => expect(server.sent.filter(({ path }) => path === '/api/status')).toHaveLength(2));
+  });
+
+  it('counts what waits and what could not be brought, and tells of each whom, why, and sends it again', async () => {
+    let dead = 1;
+    open('manager', 'phone', 'server', {
+      'GET /api/status': () => Response.json({ ...status, outbox: { waiting: 3, dead } }),
+      'GET /api/alerts/undelivered': () => Response.json(dead === 0 ? [] : [undelivered]),
+      'POST /api/alerts/undelivered/u1/again': () => {
+        dead = 0;
+        return new Response(null, { status: 204 });
+      },
+    });
+    const fact = (name: string) => screen.getByText(name).closest('[role="listitem"]')?.textContent;
+    expect(await screen.findByText('Check due, R-2409 at A1, to Hella Brandt by e-mail')).toBeTruthy();
+    expect(screen.getByText(/after 12 tries\. Connection timeout\.$/)).toBeTruthy();
+    expect(fact('Alerts on their way out')).toBe('Alerts on their way out3');
+    expect(fact('Alerts that could not be brought')).toBe('Alerts that could not be brought1');
+    fireEvent.click(screen.getByRole('button', { name: 'Send again: Check due, R-2409 at A1, to Hella Brandt' }));
+    await waitFor(() => expect(fact('Alerts that could not be brought')).toBe('Alerts that could not be brought0'));
+    expect(screen.queryByText(/to Hella Brandt by e-mail/)).toBeNull();
   });
 
   it('says why a copy could not be made, and keeps saying that the last one was not', async () => {

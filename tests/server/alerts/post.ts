@@ -10,9 +10,9 @@ import type { AlertDto } from '@/shared/contract/alert';
 import type { ChangeAlertSettingsInput } from '@/shared/contract/alert-settings';
 import type { ChargeDto } from '@/shared/contract/charge';
 import type { Role } from '@/shared/contract/roles';
-import { startMailCatcher, type MailCatcher } from '@/tests/support/fakes/mail-catcher';
-import { startPhoneService, type FakePhoneService } from '@/tests/support/fakes/phone-service';
-import { startPushService, type FakePushService } from '@/tests/support/fakes/push-service';
+import { startMailCatcher, type MailCatcher } from '@/server/demo/outside/mail-catcher';
+import { startPhoneService, type FakePhoneService } from '@/server/demo/outside/phone-service';
+import { startPushService, type FakePushService } from '@/server/demo/outside/push-service';
 import type { TestServerOptions } from '@/tests/support/server';
 import { alertsOf, at, did, makeBench, minute, running, seen, type Bench } from '../charges/bench';
 

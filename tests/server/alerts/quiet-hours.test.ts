@@ -73,6 +73,18 @@ describe('an alert in the quiet hours of its person', () => {
     expect(tags(alert.id)[0]!.notice.body).toMatch(/Kept since (Tue|Sat) \d\d:\d\d for your quiet hours\.$/);
   });
 
+  test('comes once as soon as its person takes them off, and stays where they are only moved', async () => {
+    const { alert } = await byNight('2026-06-09T19:00:00Z');
+    await post.dispatcher.runDue();
+    await wish(post, 'technician', { quiet: { from: '21:00', to: '05:00' } });
+    await post.dispatcher.runDue();
+    expect(tags(alert.id)).toEqual([]);
+    await wish(post, 'technician', { quiet: null });
+    await post.dispatcher.runDue();
+    await post.dispatcher.runDue();
+    expect(tags(alert.id)).toHaveLength(1);
+  });
+
   test('is not sent at all where somebody took it in the night', async () => {
     const { alert } = await byNight('2026-06-09T19:00:00Z');
     await post.dispatcher.runDue();

@@ -9,8 +9,8 @@ import { isPublicAddress, isPushEndpoint, publicOnlyAgent } from '@/server/alert
 import { pushKeyFile } from '@/server/data-files';
 import { PushDevice } from '@/server/entities/push-device';
 import type { AlertSettingsDto, UndeliveredDto } from '@/shared/contract/alert-settings';
-import { opened } from '@/tests/support/fakes/push-service';
-import { unregistered } from '@/tests/support/fakes/phone-service';
+import { opened } from '@/server/demo/outside/push-service';
+import { unregistered } from '@/server/demo/outside/phone-service';
 import crypto from 'node:crypto';
 import https from 'node:https';
 import { hour, minute } from '../charges/bench';
@@ -294,6 +294,6 @@ describe('the keys of this server', () => {
 
   test('are told to who asks, the public one', async () => {
     const { body } = await post.bench.as('technician').get('/api/push-key').expect(200);
-    expect(body).toEqual({ key: post.ways.pushKey });
+    expect(body).toEqual({ key: post.ways.pushKey, demo: null });
   });
 });

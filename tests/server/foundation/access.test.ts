@@ -10,6 +10,7 @@ import { photoFolder } from '@/server/data-files';
 import { can, roles, type Role } from '@/shared/contract/roles';
 import { furnish, idsOf, newKey } from '@/tests/support/furnished';
 import type { Backups } from '@/server/services/backups';
+import { outsideOfBoth } from '@/tests/support/outside';
 import { makeAgent, makeTestServer, type TestAgent } from '@/tests/support/server';
 import { walkRouter, type WalkedRoute } from '@/tests/support/walk-router';
 import { routeFixtures, type Fit, type RouteFixture } from './route-fixtures';
@@ -37,7 +38,7 @@ const backups: Backups = {
   start: () => {},
   stop: async () => {},
 };
-const server = await makeTestServer({ demo: true, limits, deps: { backups } });
+const server = await makeTestServer({ demo: true, limits, deps: { backups, outside: await outsideOfBoth() } });
 const { own, other } = await furnish(server);
 const routes = walkRouter(server.app);
 const photos = photoFolder(server.deps.config.dataDir);

@@ -35,6 +35,8 @@ const comeAndGo = {
     ...['place', 'skill', 'staffing', 'work', 'work_stint', 'bench_change'],
     ...['alert_turn', 'outbox_entry', 'push_device', 'alert_setting'],
     'finished_wait',
+    'weekly_digest',
+    'digest_stop',
   ],
   columns: [
     ...['neighbour_spare_id', 'passed_at', 'early', 'capacity_sd_ah', 'taken_at_place'],

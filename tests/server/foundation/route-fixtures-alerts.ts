@@ -17,6 +17,8 @@ export const alertFixtures: Record<string, RouteFixture> = {
   'GET /api/me/alert-settings': technician(),
   'PATCH /api/me/alert-settings': technician(() => ({ body: { quiet: { from: '22:00', to: '06:00' } } })),
   'GET /api/push-key': technician(),
+  'GET /api/demo/mailbox': technician(),
+  'POST /api/demo/phone': technician(),
   'POST /api/me/push-devices': technician(() => ({ body: { kind: 'phone', token: 'ExponentPushToken[new]' } })),
   'DELETE /api/me/push-devices/:id': technician((f) => ({ params: { id: f.deviceId } })),
 };

@@ -9,6 +9,7 @@ import { advisedForm, packForm, packReadingForm, repairForm, secondSourceForm } 
 import { testPassword } from '@/tests/support/server';
 import type { Role } from '@/shared/contract/roles';
 import { alertFixtures } from './route-fixtures-alerts';
+import { waitsFixtures } from './route-fixtures-waits';
 import { benchFixtures } from './route-fixtures-bench';
 
 export interface Fit {
@@ -155,6 +156,8 @@ export const routeFixtures: Record<string, RouteFixture> = {
     body: { ...charger(f), channels: [channelForm({ id: f.channelId, name: 'New 1' })] },
   })),
   'DELETE /api/chargers/:id': manager((f) => ({ params: { id: f.chargerId } })),
+  'POST /api/channels/:id/fault': technician((f) => ({ params: { id: f.channelId }, body: { seen: 'No current' } })),
+  'POST /api/channels/:id/works': foreman((f) => ({ params: { id: f.faultyChannelId } })),
   'GET /api/resistors': technician(),
   'POST /api/resistors': manager(() => ({ body: resistor })),
   'PATCH /api/resistors/:id': manager((f) => ({ params: { id: f.resistorId }, body: resistor })),
@@ -241,6 +244,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/repairs': technician(),
   'POST /api/repairs': technician((f) => ({ body: booked(f) })),
   'GET /api/repairs/:id': technician(repair()),
+  'GET /api/repairs/:id/season': technician(repair()),
   'PATCH /api/repairs/:id': technician(repair(booked)),
   'POST /api/repairs/:id/readings': technician(repair((f) => packReadingForm({ meterId: f.meterId }))),
   'POST /api/repairs/:id/readings/:readingId/set-aside': technician((f) => ({
@@ -308,20 +312,7 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'GET /api/search': technician(() => ({ query: 'q=van' })),
 
   'GET /api/board': technician(),
-  'GET /api/waits': foreman(),
-  'GET /api/waits.csv': foreman(),
-  'GET /api/waits/groups': foreman(() => ({ query: 'by=way' })),
-  'GET /api/waits/charges': foreman(),
-  'GET /api/waits/compare': foreman(() => ({ query: 'compareFrom=2026-04-01&compareTo=2026-04-30' })),
-
-  'POST /api/waits/what-if': foreman((f) => ({
-    body: { questions: [{ moreLikeChannelId: f.channelId }], together: false },
-  })),
-  'POST /api/waits/channels-needed': foreman((f) => ({ body: { channelId: f.channelId, wishedP90Hours: 4 } })),
-  'POST /api/waits/shelf': foreman((f) => ({ body: { moduleTypeId: f.typeId } })),
-  'GET /api/waits/replays/:id': foreman((f) => ({ params: { id: f.replayId } })),
-  'POST /api/waits/replays/:id/cancel': foreman((f) => ({ params: { id: f.replayId } })),
-
+  ...waitsFixtures,
   ...benchFixtures,
   ...alertFixtures,
 };

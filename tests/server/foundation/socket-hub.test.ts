@@ -1,7 +1,7 @@
 import http from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { io, type Socket } from 'socket.io-client';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { Person } from '@/server/entities/person';
 import { Session } from '@/server/entities/session';
 import { Wall } from '@/server/entities/wall';
@@ -180,7 +180,7 @@ describe('an announcement', () => {
     expect(others).toEqual(['people:changed']);
   });
 
-  it('reaches a wall only where it concerns the board: charges, channels, not people, stock or alerts', async () => {
+  it('reaches a wall only as what its board shows otherwise: nothing of people, stock, alerts or who else listens', async () => {
     await addWall();
     const wall = await ready(connect({ as: 'wall', cookie: wallCookie }));
     const heard: string[] = [];
@@ -188,10 +188,32 @@ describe('an announcement', () => {
     for (const event of ['people:changed', 'stock:changed', 'equipment:changed', 'walls:changed'] as const)
       hub.toWorkshop(server.own.id, event, { at: '' });
     hub.toWorkshop(server.own.id, 'alert:changed', { id: 'a', at: '' });
-    const last = once(wall, 'board:changed');
-    hub.toWorkshop(server.own.id, 'board:changed', { rev: 1, at: '', chargeId: null });
-    await last;
-    expect(heard).toEqual(['equipment:changed', 'board:changed']);
+    hub.toWorkshop(server.own.id, 'charge:changed', { id: 'c', rev: 3, at: '' });
+    const told = once(wall, 'wall:changed');
+    await server.deps.dataSource.manager.update(Workshop, { id: server.own.id }, { boardRev: 2 });
+    hub.toWorkshop(server.own.id, 'board:changed', { rev: 2, at: '', chargeId: null });
+    expect(await told).toMatchObject({ from: 1, rev: 2, cards: [], order: null, channels: null });
+    expect(heard).toEqual(['wall:changed']);
+  });
+
+  it('of a board whose reading fails sends the walls to read it for themselves, and the next is told again', async () => {
+    await addWall();
+    const wall = await ready(connect({ as: 'wall', cookie: wallCookie }));
+    const { manager } = server.deps.dataSource;
+    const find = vi.spyOn(manager, 'find').mockRejectedValue(new Error('gone'));
+    const failed = once(wall, 'wall:changed');
+    hub.toWorkshop(server.own.id, 'board:changed', { rev: 2, at: '', chargeId: null });
+    expect(await failed).toEqual({ from: null, rev: 2 });
+    find.mockRestore();
+    // What is kept was thrown away, so this one is read whole and has nothing to differ from.
+    const next = once(wall, 'wall:changed');
+    await manager.update(Workshop, { id: server.own.id }, { boardRev: 3 });
+    hub.toWorkshop(server.own.id, 'board:changed', { rev: 3, at: '', chargeId: null });
+    expect(await next).toEqual({ from: null, rev: 3 });
+    const last = once(wall, 'wall:changed');
+    await manager.update(Workshop, { id: server.own.id }, { boardRev: 4 });
+    hub.toWorkshop(server.own.id, 'board:changed', { rev: 4, at: '', chargeId: null });
+    expect(await last).toMatchObject({ from: 3, rev: 4 });
   });
 });
 

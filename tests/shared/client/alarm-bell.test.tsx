@@ -8,6 +8,7 @@ import { queryClient } from '@/shared/client/query-client';
 import { rememberSignedIn } from '@/shared/client/session-state';
 import { contours, vibrationOf, type SoundName } from '@/shared/client/sound-contours';
 import type { AlertDto } from '@/shared/contract/alert';
+import { audioContextThat } from '../../support/audio-context';
 import { fakeServer } from '../../app/workshop/server';
 
 /** The socket's two ends: what the page listens to, and the mouth of the server. */
@@ -74,30 +75,10 @@ function browser() {
   shaken = [];
   told = [];
   for (const context of contexts) context.state = 'suspended';
-  class Context {
-    state = 'suspended';
-    currentTime = 0;
-    destination = {};
-    constructor() {
-      contexts.add(this);
-    }
-    resume = async () => void (this.state = 'running');
-    createGain = () => ({
-      gain: { setValueAtTime() {}, linearRampToValueAtTime() {} },
-      connect: () => ({}),
-    });
-    createOscillator = () => {
-      const frequency = { value: 0 };
-      return {
-        type: '',
-        frequency,
-        connect: (next: object) => next,
-        start: () => played.push(frequency.value),
-        stop() {},
-      };
-    };
-  }
-  vi.stubGlobal('AudioContext', Context);
+  vi.stubGlobal(
+    'AudioContext',
+    audioContextThat((hertz) => played.push(hertz), contexts),
+  );
   vi.stubGlobal(
     'Notification',
     Object.assign(function Notification() {}, { permission: 'granted' }),
@@ -231,6 +212,40 @@ describe('an alert that is raised', () => {
 });
 
 describe('what its person has set', () => {
+  const ownRests = { id: 'c1', stage: 'resting', person: petra };
+  const boardOf = (charges: unknown[]) => Response.json({ rev: 1, at: iso(start), charges, channels: [] });
+  it.each([
+    ['wanted: the low tone when its rest begins', ['app'], null, ['resting']],
+    ['not wanted by this page: silence', ['e-mail'], null, []],
+    ['in quiet hours: silence', ['app'], { from: '10:30', to: '11:20' }, []],
+  ] as const)('the end of current is %s', async (_how, ways, quiet, sounds) => {
+    const settings = { ways: [{ kind: 'charge-done', level: 'tell', ways }], quiet, alarmsBreakThrough: true };
+    server.answers['GET /api/me/alert-settings'] = () => Response.json(settings);
+    server.answers['GET /api/board'] = () => boardOf([{ ...ownRests, stage: 'tapering' }]);
+    await open();
+    await tap();
+    act(() => void queryClient.setQueryData(['board'], { rev: 2, at: iso(start), charges: [ownRests], channels: [] }));
+    await pass(1000);
+    expect(played).toEqual(tonesOf(...sounds));
+  });
+
+  it.each(['visible', 'hidden'] as const)(
+    'a cause that is not wanted by this page neither rings nor shows a notice, the page being %s',
+    async (state) => {
+      const one = alert({ raisedAt: iso(Date.now()) });
+      const ways = [{ kind: one.kind, level: one.level, ways: ['browser-push', 'e-mail'] }];
+      server.answers['GET /api/me/alert-settings'] = () =>
+        Response.json({ ways, quiet: null, alarmsBreakThrough: true });
+      await open();
+      await tap();
+      look(state);
+      listed = [one];
+      says('alert:raised', one);
+      await pass(20 * minute);
+      expect([played, shaken, told]).toEqual([[], [], []]);
+    },
+  );
+
   it('in quiet hours nothing rings till they are over, then what is open does, once', async () => {
     // 11:00 on the clock of the workshop, which keeps UTC.
     const settings = { ways: [], quiet: { from: '10:30', to: '11:20' }, alarmsBreakThrough: true };

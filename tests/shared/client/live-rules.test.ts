@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { liveRoots, makeLiveRules } from '@/shared/client/live-rules';
+import type { WallChangeDto } from '@/shared/contract/board';
 
 const at = '2026-06-09T11:42:00.000Z';
 
@@ -65,6 +66,47 @@ describe('announcements', () => {
     expect(old).not.toContain('charge c1');
     rules.on('charge:changed', { id: 'c1', rev: 9, at });
     expect(old).toContain('charge c1');
+  });
+});
+
+describe('a wall', () => {
+  const change = { from: 4, rev: 5, cards: [], order: null, channels: null } as unknown as WallChangeDto;
+  function wall(shown: number | null, puts: boolean) {
+    const old: string[] = [];
+    const state = { shown };
+    const rules = makeLiveRules({
+      old: (root) => void old.push(root),
+      boardRev: () => state.shown,
+      chargeRev: () => null,
+      wall: { shown: () => state.shown, put: () => puts },
+    });
+    return { old, state, rules };
+  }
+
+  it('asks for nothing where what changed could be put on its board, and for the board where it could not', () => {
+    const can = wall(4, true);
+    can.rules.on('wall:changed', change);
+    expect(can.old).toEqual([]);
+    const cannot = wall(3, false);
+    cannot.rules.on('wall:changed', change);
+    expect(cannot.old).toEqual(['board']);
+    const untold = wall(4, true);
+    untold.rules.on('wall:changed', { from: null, rev: 5 });
+    expect(untold.old).toEqual(['board']);
+  });
+
+  it('hears by the next heartbeat that the board it asked for is from before what it was told', () => {
+    const { old, state, rules } = wall(null, false);
+    rules.on('heartbeat', { at, rev: 5 });
+    // An answer that was read before revision 5 and comes after it was told.
+    state.shown = 4;
+    old.length = 0;
+    rules.on('heartbeat', { at, rev: 5 });
+    expect(old).toContain('board');
+    state.shown = 5;
+    old.length = 0;
+    rules.on('heartbeat', { at, rev: 5 });
+    expect(old).toEqual([]);
   });
 });
 

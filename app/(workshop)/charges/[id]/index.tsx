@@ -13,6 +13,7 @@ import { useCan, useMember } from '@/shared/client/session';
 import { useWaiting } from '@/shared/client/waiting/waiting';
 import { useWorkshop } from '@/shared/client/workshop';
 import type { ChargeDto } from '@/shared/contract/charge';
+import { ChannelsPart } from '@/shared/screens/charge/channels-part';
 import { ChargeMissing } from '@/shared/ui/charge/charge-missing';
 import { isOutside, type LiveAct } from '@/shared/ui/charge/live-acts';
 import { LiveScreen } from '@/shared/ui/charge/live-screen';
@@ -113,6 +114,7 @@ function Live({
       people={people}
       meters={meters}
       mayHandOver={maySendOthers || charge.person === null || charge.person.id === member.person.id}
+      channels={<ChannelsPart charge={charge} now={at.now} offline={link.state === 'down'} />}
       acts={acts}
       sheet={sheet}
       stopDraft={stopDraft}

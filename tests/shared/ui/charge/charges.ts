@@ -77,6 +77,7 @@ export function charge(stage: Stage, more: Partial<ChargeDto> = {}): ChargeDto {
       })),
     }),
     option,
+    channels: [{ id: 'ch-b2', name: 'B2', fault: null }],
     moduleTypeId: 't1',
     shelfPlace: 'D3',
     meterId: 'm1',

@@ -67,7 +67,7 @@ function partsOf(raw: string): Record<string, string> {
 }
 
 /** @param taking called when a letter was taken, before that is answered */
-export async function startMailCatcher(taking: () => void = () => {}): Promise<MailCatcher> {
+export async function startMailCatcher(taking: (letter: CaughtLetter) => void = () => {}): Promise<MailCatcher> {
   const caught: CaughtLetter[] = [];
   const refuse: number[] = [];
   const server = new SMTPServer({
@@ -82,14 +82,15 @@ export async function startMailCatcher(taking: () => void = () => {}): Promise<M
         if (responseCode !== undefined) return void done(Object.assign(new Error('not this letter'), { responseCode }));
         const raw = Buffer.concat(chunks).toString('utf8');
         const { mailFrom, rcptTo } = session.envelope;
-        caught.push({
+        const letter: CaughtLetter = {
           to: rcptTo.map(({ address }) => address),
           from: mailFrom ? mailFrom.address : '',
           raw,
           headers: split(raw).headers,
           parts: partsOf(raw),
-        });
-        taking();
+        };
+        caught.push(letter);
+        taking(letter);
         done();
       });
     },

@@ -42,7 +42,7 @@ export const unregistered: Failure = {
 };
 
 /** @param taking called when a message was taken, before that is answered */
-export async function startPhoneService(taking: () => void = () => {}): Promise<FakePhoneService> {
+export async function startPhoneService(taking: (message: PhoneMessage) => void = () => {}): Promise<FakePhoneService> {
   const taken: PhoneMessage[] = [];
   const tickets: string[] = [];
   const unknown = new Set<string>();
@@ -66,7 +66,7 @@ export async function startPhoneService(taking: () => void = () => {}): Promise<
       taken.push(message);
       const id = `ticket-${tickets.length + 1}`;
       tickets.push(id);
-      taking();
+      taking(message);
       return { status: 'ok', id };
     });
   };

@@ -5,7 +5,8 @@
 import crypto from 'node:crypto';
 import https from 'node:https';
 import type { AddressInfo } from 'node:net';
-import { makeLocalCertificate } from '@/server/cli/certificate';
+import { makeLocalCertificate } from '../../cli/certificate';
+import { agentTo } from './agent-to';
 
 export interface TakenPush {
   /** Name of the browser it came for. */
@@ -33,6 +34,8 @@ export interface FakePushService {
   ended: Set<string>;
   /** Connections that trust this service. */
   agent: https.Agent;
+  /** Connections that end here wherever they were meant for. */
+  everywhere: https.Agent;
   certificate: string;
   close(): Promise<void>;
 }
@@ -62,6 +65,25 @@ export function opened(body: Buffer, browser: { ecdh: crypto.ECDH; auth: Buffer 
   return plain.subarray(0, plain.lastIndexOf(2)).toString('utf8');
 }
 
+interface Keys {
+  ecdh: crypto.ECDH;
+  auth: Buffer;
+}
+
+function newBrowser(): Keys {
+  const ecdh = crypto.createECDH('prime256v1');
+  ecdh.generateKeys();
+  return { ecdh, auth: crypto.randomBytes(16) };
+}
+
+/** The keys of a browser by its name; those of the same name are the same. */
+function browserOf(secret: Buffer, name: string): Keys {
+  const derive = (use: string): Buffer => hmac(secret, Buffer.from(`${use} of ${name}`));
+  const ecdh = crypto.createECDH('prime256v1');
+  ecdh.setPrivateKey(derive('key'));
+  return { ecdh, auth: derive('secret').subarray(0, 16) };
+}
+
 /** Whom the Authorization header names: its signature must be right and made for this service. */
 export function senderOf(header: string, audience: string): { key: string; subject: string } {
   const [, token = '', key = ''] = /^vapid t=([^,]+), ?k=(.+)$/.exec(header) ?? [];
@@ -84,10 +106,21 @@ export function senderOf(header: string, audience: string): { key: string; subje
   return { key, subject: sub };
 }
 
+export interface PushServiceOptions {
+  /** From this the keys of every browser follow, so that those of an earlier start are known again. */
+  secret?: Buffer;
+  /** Where browsers say that the service is; left out: where it listens. */
+  origin?: string;
+}
+
 /** @param taking called when a message was taken, before that is answered */
-export async function startPushService(taking: () => void = () => {}): Promise<FakePushService> {
+export async function startPushService(
+  taking: (push: TakenPush) => void = () => {},
+  { secret, origin }: PushServiceOptions = {},
+): Promise<FakePushService> {
   const { chain, key, issuer } = await makeLocalCertificate(['localhost'], new Date());
-  const browsers = new Map<string, { ecdh: crypto.ECDH; auth: Buffer }>();
+  const browsers = new Map<string, Keys>();
+  const known = (name: string) => browsers.get(name) ?? (secret ? browserOf(secret, name) : undefined);
   const taken: TakenPush[] = [];
   const answers: FakePushService['answers'] = [];
   const ended = new Set<string>();
@@ -98,7 +131,7 @@ export async function startPushService(taking: () => void = () => {}): Promise<F
     request.on('data', (chunk: Buffer) => chunks.push(chunk));
     request.on('end', () => {
       const name = decodeURIComponent((request.url ?? '').slice('/push/'.length));
-      const browser = browsers.get(name);
+      const browser = known(name);
       const answer = answers.shift();
       if (!browser || ended.has(name)) return void response.writeHead(410).end();
       if (answer && !answer.takes) {
@@ -108,14 +141,15 @@ export async function startPushService(taking: () => void = () => {}): Promise<F
       try {
         const { key: sender, subject } = senderOf(request.headers.authorization ?? '', audience);
         const { topic, ttl, urgency } = request.headers as Record<string, string | undefined>;
-        taken.push({
+        const push: TakenPush = {
           browser: name,
           headers: { topic, ttl: Number(ttl), urgency },
           notice: JSON.parse(opened(Buffer.concat(chunks), browser)) as TakenPush['notice'],
           sender,
           subject,
-        });
-        taking();
+        };
+        taken.push(push);
+        taking(push);
         response.writeHead(answer?.status ?? 201).end();
       } catch (error) {
         response.writeHead(400).end(String(error));
@@ -123,13 +157,14 @@ export async function startPushService(taking: () => void = () => {}): Promise<F
     });
   });
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
-  audience = `https://localhost:${(server.address() as AddressInfo).port}`;
+  const { port } = server.address() as AddressInfo;
+  audience = origin ?? `https://localhost:${port}`;
   const agent = new https.Agent({ ca: issuer });
+  const everywhere = agentTo(port, issuer);
   return {
     subscribe(browser) {
-      const ecdh = crypto.createECDH('prime256v1');
-      const p256dh = ecdh.generateKeys('base64url');
-      const auth = crypto.randomBytes(16);
+      const { ecdh, auth } = secret ? browserOf(secret, browser) : newBrowser();
+      const p256dh = ecdh.getPublicKey('base64url');
       browsers.set(browser, { ecdh, auth });
       return {
         endpoint: `${audience}/push/${encodeURIComponent(browser)}`,
@@ -140,9 +175,11 @@ export async function startPushService(taking: () => void = () => {}): Promise<F
     answers,
     ended,
     agent,
+    everywhere,
     certificate: issuer,
     close: () => {
       agent.destroy();
+      everywhere.destroy();
       server.closeAllConnections();
       return new Promise((resolve) => server.close(() => resolve()));
     },

@@ -7,8 +7,8 @@ import type { MigrationInterface, QueryRunner } from 'typeorm';
  * The table is kept in the order of its key: the waits of a workshop lie side by side, and a year of them is read without
  * jumping. Read in the order of the rows 200,000 waits of one of 50 workshops lie on as many pages.
  */
-export class FinishedWaits1767100000000 implements MigrationInterface {
-  readonly name = 'FinishedWaits1767100000000';
+export class FinishedWaits1767110000000 implements MigrationInterface {
+  readonly name = 'FinishedWaits1767110000000';
 
   async up(runner: QueryRunner): Promise<void> {
     await runner.query(
