@@ -104,6 +104,7 @@ const titles: Readonly<Record<string, string>> = {
   more: 'More',
   'me/index': 'Name and password',
   'me/alerts': 'Alerts and where they go',
+  'me/weekly-digest': 'Weekly letter',
   waiting: 'Waiting on this device',
   alerts: 'Alerts',
   waits: 'Waits',
