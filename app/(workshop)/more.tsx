@@ -110,6 +110,7 @@ const roleWords = { technician: 'Technician', foreman: 'Foreman', manager: 'Mana
 function Me() {
   const router = useRouter();
   const { person } = useMember();
+  const readsLetter = useCan('workshop:write');
   const now = useNow(60_000);
   const counts = useWaitingCounts();
   const waiting = counts.waiting + counts.refused;
@@ -144,6 +145,15 @@ function Me() {
           meaning="Letters and pushes that it has sent"
           href="/demo/mailbox"
           onPress={() => router.navigate('/demo/mailbox' as Href)}
+        />
+      ) : null}
+      {readsLetter ? (
+        <MoreRow
+          icon="waits"
+          title="Weekly letter"
+          meaning="The waits of each week, by e-mail"
+          href="/me/weekly-digest"
+          onPress={() => router.navigate('/me/weekly-digest' as Href)}
         />
       ) : null}
       <MoreRow title="Signed in on" meaning="Devices, and sign out everywhere" onPress={() => setOpen('sessions')} />

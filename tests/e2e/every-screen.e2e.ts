@@ -53,6 +53,8 @@ const screens = [
   '/work/W-0012/edit',
   '/work/no-such-work',
   '/waits',
+  '/waits?weeks=4&by=weekday&show=plan&compare=before',
+  '/waits/charges?weeks=4',
   '/workshop',
   ...[
     'people',
@@ -91,6 +93,7 @@ const screens = [
   '/me',
   '/me/alerts',
   '/demo/mailbox',
+  '/me/weekly-digest',
 ] as const;
 
 /** What a foreman or a technician sees otherwise than a manager, who is shown all: what the role opens, locks or hides. */

@@ -35,6 +35,7 @@ import { HandOverPart } from './hand-over-part';
 import { NextButton } from './next-button';
 import { PhotosPart } from './photos-part';
 import { RepairMenu } from './repair-menu';
+import { SeasonPart } from './season-part';
 import { RepairSheets, type OpenSheet } from './repair-sheets';
 
 /** One repair: where it stands among its seven steps, what the pack reads, its charge, and the one thing to do next. */
@@ -101,6 +102,7 @@ export function RepairPage({
         now={now}
         onCorrect={mayWrite ? (wait) => setSheet({ kind: 'wait', wait }) : null}
       />
+      <SeasonPart repairId={repair.id} />
     </>
   );
   const booked = Date.parse(repair.bookedAt);

@@ -1,55 +1,84 @@
+import type { ReactNode } from 'react';
 import { View } from 'react-native';
 import type { WaitsDto } from '@/shared/contract/waits';
-import { NBSP } from '../format/marks';
+import { duration } from '../format/duration';
 import { Duration, Num } from '../primitives/num';
+import { PressableLink } from '../primitives/pressable-link';
 import { Txt } from '../primitives/txt';
 import { makeStyles } from '../theme/make-styles';
+import { chargesWord, fewWords, usedShare } from './wait-words';
 import { weekFigure } from './week-figure';
 
-/** Under so many charges a middle value says little. */
-export const fewCharges = 5;
+/** The way to the charges behind a number; `week` is the Monday of the week it stands for. */
+export interface WaysBehind {
+  hrefOf: (week?: string) => string;
+  onGo: (path: string) => void;
+}
 
-/** '+4 min', '−12 min': later or sooner than planned. */
-export const againstPlan = (seconds: number): string => {
-  const minutes = Math.round(seconds / 60);
-  return `${minutes > 0 ? '+' : minutes < 0 ? '−' : ''}${Math.abs(minutes)}${NBSP}min`;
-};
-
-/** The figures over the page, each with what it means. */
-export function WaitFigures({ waits, today }: { waits: WaitsDto; today: string }) {
+/** The figures over the page, each with what it means and the way to the charges behind it. */
+export function WaitFigures({ waits, today, ways }: { waits: WaitsDto; today: string; ways: WaysBehind }) {
   const styles = useStyles();
   const week = weekFigure(waits.weeks, today);
+  const used = usedShare(waits);
+  const { few, plan } = waits;
   return (
     <View style={styles.row}>
       {week ? (
-        <Figure title={week.title} note={week.note}>
+        <Figure title={week.title} note={week.note} href={ways.hrefOf(week.monday)} ways={ways}>
           <Num value={String(Math.round(week.hours))} unit="h" kind="numL" />
         </Figure>
       ) : null}
-      <Figure title="Wait of one charge" note="half of them waited less">
-        {waits.charges === 0 ? <Txt kind="numL">–</Txt> : <Duration seconds={waits.medianS} kind="numL" />}
-      </Figure>
-      <Figure title="9 of 10 waited less than" note={`${waits.charges} charges`}>
-        {waits.charges === 0 ? <Txt kind="numL">–</Txt> : <Duration seconds={waits.p90S} kind="numL" />}
+      <Figure
+        title="Wait that was used"
+        note={used === null ? 'no wait in working hours' : usedNote(waits)}
+        ways={ways}
+      >
+        {used === null ? <None /> : <Num value={String(Math.round(used * 100))} unit="%" kind="numL" />}
       </Figure>
       <Figure
-        title="Finish inside its band"
-        note={`80 % is the aim${waits.plan === null ? '' : `; ${againstPlan(waits.plan.againstPlanS)} against the plan`}`}
+        title="Wait of one charge"
+        note={few ? fewWords : `9 of 10 under ${duration(waits.p90S, 'minute')}`}
+        ways={ways}
       >
-        {waits.plan === null ? (
-          <Txt kind="numL">–</Txt>
+        {few ? <None /> : <Duration seconds={waits.medianS} precision="minute" kind="numL" />}
+      </Figure>
+      <Figure title="Finish inside its band" note={few ? fewWords : '80 % is the aim'} ways={ways}>
+        {few || plan === null ? (
+          <None />
         ) : (
-          <Num value={String(Math.round(waits.plan.insideBand * 100))} unit="%" kind="numL" />
+          <Num value={String(Math.round(plan.insideBand * 100))} unit="%" kind="numL" />
         )}
       </Figure>
     </View>
   );
 }
 
-function Figure({ title, note, children }: { title: string; note: string; children: React.ReactNode }) {
+const usedNote = ({ usedHours, lostHours, charges }: WaitsDto): string =>
+  `${Math.round(usedHours)} of ${Math.round(usedHours + lostHours)} h, ${chargesWord(charges)}`;
+
+const None = () => <Txt kind="numL">–</Txt>;
+
+function Figure({
+  title,
+  note,
+  href,
+  ways,
+  children,
+}: {
+  title: string;
+  note: string;
+  href?: string;
+  ways: WaysBehind;
+  children: ReactNode;
+}) {
   const styles = useStyles();
+  const to = href ?? ways.hrefOf();
   return (
-    <View style={styles.figure}>
+    <PressableLink
+      href={to}
+      onGo={() => ways.onGo(to)}
+      style={({ pressed }) => [styles.figure, pressed && styles.pressed]}
+    >
       <Txt kind="small" tone="ink2">
         {title}
       </Txt>
@@ -57,11 +86,12 @@ function Figure({ title, note, children }: { title: string; note: string; childr
       <Txt kind="small" tone="ink2">
         {note}
       </Txt>
-    </View>
+    </PressableLink>
   );
 }
 
 const useStyles = makeStyles(({ colors }) => ({
   row: { flexDirection: 'row', flexWrap: 'wrap', columnGap: 24, rowGap: 16 },
   figure: { flexGrow: 1, flexBasis: 150, borderLeftWidth: 3, borderLeftColor: colors.ink, paddingLeft: 14, rowGap: 2 },
+  pressed: { backgroundColor: colors.well },
 }));
