@@ -5,7 +5,7 @@
 import crypto from 'node:crypto';
 import https from 'node:https';
 import type { AddressInfo } from 'node:net';
-import { makeLocalCertificate } from '../../cli/certificate';
+import { makeLocalCertificate } from '../../local-certificate';
 import { agentTo } from './agent-to';
 
 export interface TakenPush {

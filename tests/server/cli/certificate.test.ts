@@ -2,7 +2,7 @@ import { X509Certificate } from 'node:crypto';
 import https from 'node:https';
 import type { AddressInfo } from 'node:net';
 import { expect, test } from 'vitest';
-import { makeLocalCertificate } from '@/server/cli/certificate';
+import { makeLocalCertificate } from '@/server/local-certificate';
 
 /** The status a client gets that trusts nothing but the issuer. */
 function get(port: number, host: string, ca: string): Promise<number | undefined> {

@@ -14,7 +14,7 @@ import { databaseFile } from '@/server/data-files';
 import { makeLog } from '@/server/middleware/request-log';
 import { migrate } from '@/server/migrate';
 import { migrations } from '@/server/migrations/all';
-import { makeLocalCertificate } from '@/server/cli/certificate';
+import { makeLocalCertificate } from '@/server/local-certificate';
 import { startServer, type RunningServer } from '@/server/start-server';
 import { cookiesOf } from '@/tests/support/cookies';
 import { testConfig } from '@/tests/support/server';
