@@ -1,4 +1,5 @@
 import { AsyncLocalStorage } from 'node:async_hooks';
+import type { Database } from 'better-sqlite3';
 import type { EntityManager } from 'typeorm';
 import type { Deps } from '../deps';
 import { idempotencyContext, recordIdempotencyKey } from './idempotency-context';
@@ -41,7 +42,7 @@ async function transact<T>(deps: Pick<Deps, 'dataSource'>, work: (manager: Entit
     );
   } catch (error) {
     if (write) write.recorded = recordedBefore;
-    await endLeftOver(deps);
+    endLeftOver(deps);
     throw error;
   } finally {
     // What was started within and outlives it (a timer) is outside from now on.
@@ -54,11 +55,10 @@ async function transact<T>(deps: Pick<Deps, 'dataSource'>, work: (manager: Entit
  * and it goes on counting the transaction as open: the next ones would be savepoints within none, and once one of them is
  * rolled back, what comes after it would be committed never.
  */
-async function endLeftOver({ dataSource }: Pick<Deps, 'dataSource'>): Promise<void> {
+function endLeftOver({ dataSource }: Pick<Deps, 'dataSource'>): void {
   // The one that all share.
   const runner = dataSource.createQueryRunner();
-  if (!runner.isTransactionActive) return;
-  // Usually there is none any more.
-  await runner.query('ROLLBACK').catch(() => undefined);
+  const { databaseConnection } = dataSource.driver as unknown as { databaseConnection: Database };
+  if (!runner.isTransactionActive || databaseConnection.inTransaction) return;
   Object.assign(runner, { isTransactionActive: false, transactionDepth: 0 });
 }
