@@ -1,4 +1,5 @@
 import { useRouter, type Href } from 'expo-router';
+import { lazy, Suspense } from 'react';
 import { View } from 'react-native';
 import { sentenceOf } from '@/shared/client/api-problem';
 import { useBoard } from '@/shared/client/board';
@@ -15,7 +16,6 @@ import { FillCard } from '@/shared/screens/work/fill-card';
 import { useMyFills } from '@/shared/screens/work/use-my-fills';
 import { SoundTool } from '@/shared/ui/alerts/sound-tool';
 import { BenchList } from '@/shared/ui/bench/bench-list';
-import { FirstPlan } from '@/shared/ui/bench/first-plan';
 import { needsOf } from '@/shared/ui/bench/plan-needs';
 import { firstName } from '@/shared/ui/charge/card-model';
 import { clock } from '@/shared/ui/format/clock';
@@ -28,6 +28,9 @@ import { ErrorState } from '@/shared/ui/states/error-state';
 import { Loading } from '@/shared/ui/states/loading';
 import { margin } from '@/shared/ui/theme/tokens';
 import { useBreakpoint } from '@/shared/ui/theme/use-breakpoint';
+
+// Only for a bench with nothing on it.
+const FirstPlan = lazy(() => import('@/shared/ui/bench/first-plan').then((part) => ({ default: part.FirstPlan })));
 
 export { ErrorBoundary } from '@/shared/ui/shell/error-boundary';
 
@@ -124,7 +127,9 @@ function EmptyBench({ onGo }: { onGo: (path: string) => void }) {
       sentence="No charges. Plan one from a spare on the shelf."
       action={{ title: 'Plan a charge', icon: 'plan', onPress: () => onGo('/plan') }}
     >
-      <FirstPlan needs={complete ? null : needs} onGo={onGo} />
+      <Suspense fallback={null}>
+        <FirstPlan needs={complete ? null : needs} onGo={onGo} />
+      </Suspense>
     </Empty>
   );
 }

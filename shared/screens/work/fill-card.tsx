@@ -1,10 +1,12 @@
-import { useState } from 'react';
+import { lazy, Suspense, useState } from 'react';
 import { useLink } from '@/shared/client/link';
 import { useWorkActs } from '@/shared/client/work-acts';
 import type { PlanBlockDto } from '@/shared/contract/bench-plan';
 import { useToast } from '@/shared/ui/primitives/toast';
-import { DoneSheet } from '@/shared/ui/work/done-sheet';
 import { FillDock } from '@/shared/ui/work/fill-dock';
+
+// It comes with the fields of a form, which the first screen does without.
+const DoneSheet = lazy(() => import('@/shared/ui/work/done-sheet').then((part) => ({ default: part.DoneSheet })));
 
 /** One's own fill with what can be done with it: begin, done, give back. */
 export function FillCard({
@@ -48,20 +50,22 @@ export function FillCard({
         onGiveBack={() => acts.giveBack(workId, stint.id, said(`${block.title} is open again.`))}
       />
       {ending ? (
-        <DoneSheet
-          title={block.title}
-          busy={acts.busy}
-          problem={problem}
-          onClose={() => setEnding(false)}
-          onEnd={(minutesLeft) =>
-            acts.end(
-              workId,
-              stint.id,
-              minutesLeft,
-              said(minutesLeft > 0 ? `The rest of ${block.title} is open again.` : `${block.title} is done.`),
-            )
-          }
-        />
+        <Suspense fallback={null}>
+          <DoneSheet
+            title={block.title}
+            busy={acts.busy}
+            problem={problem}
+            onClose={() => setEnding(false)}
+            onEnd={(minutesLeft) =>
+              acts.end(
+                workId,
+                stint.id,
+                minutesLeft,
+                said(minutesLeft > 0 ? `The rest of ${block.title} is open again.` : `${block.title} is done.`),
+              )
+            }
+          />
+        </Suspense>
       ) : null}
     </>
   );
