@@ -105,6 +105,7 @@ const titles: Readonly<Record<string, string>> = {
   'me/index': 'Name and password',
   'me/alerts': 'Alerts and where they go',
   'me/weekly-digest': 'Weekly letter',
+  'demo/mailbox': 'Mailbox of the demo',
   waiting: 'Waiting on this device',
   alerts: 'Alerts',
   waits: 'Waits',

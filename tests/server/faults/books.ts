@@ -80,6 +80,10 @@ export const transitionsIn = (dataDir: string): number =>
     return row!.n as number;
   });
 
+/** How many charges the server has still to look at: their instant has come. */
+export const dueIn = (dataDir: string, now: number): number =>
+  reading(dataDir, (all) => all(`SELECT count(*) AS n FROM charge WHERE next_due_at <= ${now}`)[0]!.n as number);
+
 export const readBooks = (dataDir: string): Books =>
   reading(dataDir, (all) => {
     const charges = new Map<string, ChargeBooks>();

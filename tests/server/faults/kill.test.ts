@@ -15,7 +15,7 @@ import { startMailCatcher, type MailCatcher } from '@/server/demo/outside/mail-c
 import { startPhoneService, type FakePhoneService } from '@/server/demo/outside/phone-service';
 import { startPushService, type FakePushService } from '@/server/demo/outside/push-service';
 import { kept, makeBench, minute } from '../charges/bench';
-import { impossibleIn, readBooks, transitionsIn } from './books';
+import { dueIn, impossibleIn, readBooks, transitionsIn } from './books';
 import { makeLane, type Lane } from './lane';
 import { startMortal, type MortalServer } from './mortal-server';
 import { makeClient, type RepeatingClient } from './repeating-client';
@@ -108,6 +108,18 @@ async function untilNothingWaits(): Promise<void> {
   throw new Error(`The outbox is not empty after 30 s:\n${server.output()}`);
 }
 
+/**
+ * Until the server has looked at whatever fell due: a person who says that the current is off before it has needs no alert
+ * that it ended, and gets none.
+ */
+async function untilNothingIsDue(dataDir: string): Promise<void> {
+  for (let tries = 0; tries < 1200; tries += 1) {
+    if (dueIn(dataDir, server.now()) === 0) return;
+    await pause(50);
+  }
+  throw new Error(`Charges are due and not looked at for 60 s:\n${server.output()}`);
+}
+
 /** Kills the server at a moment from now on; the kind of moment goes round. */
 function plotKill(during: 'acts' | 'time'): void {
   const service = (['push', 'phones', 'mail'] as const)[Math.floor(random() * 3)]!;
@@ -140,6 +152,7 @@ async function work(lanes: Lane[], dataDir: string, idleId: string): Promise<voi
     // The sleeper hears of a write that time has passed; else it looks every half minute.
     const bell = { code: 'isolation', answer: 'yes' };
     await client.post(`/api/charges/${idleId}/checks`, bell, { key: `kill-test-bell-${(bells += 1)}` });
+    await untilNothingIsDue(dataDir);
     await untilNothingWaits();
   }
 }
