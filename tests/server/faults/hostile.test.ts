@@ -33,7 +33,7 @@ let port: number;
 let chargeId: string;
 
 beforeAll(async () => {
-  const preloads = { 'set-clock': 'tests/server/faults/set-clock.ts', 'full-disk': 'tests/server/faults/full-disk.ts' };
+  const preloads = { 'set-clock': 'tests/support/set-clock.mjs', 'full-disk': 'tests/server/faults/full-disk.ts' };
   await bundleServer(bundle, preloads);
   const bench = await makeBench();
   try {
