@@ -1,4 +1,4 @@
-import { act, cleanup, fireEvent, screen, waitFor, within } from '@testing-library/react';
+import { act, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { router } from 'expo-router';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { connected, lost } from '@/shared/client/link';
@@ -123,26 +123,32 @@ describe('the side column', () => {
     await waitFor(() => expect(writes('/api/bench-plan/undo/change-1')).toHaveLength(1));
   });
 
-  it('names the look-ins that nobody can do with the reason of each, those of one reason together', async () => {
+  describe('names the look-ins that nobody can do', () => {
     const look = (clock: string, kind: 'away' | 'busy', because: string) => ({
       ...{ chargeId: 'R-2411', title: 'R-2411', channelName: 'A2', dueAt: iso(clock), doneAt: null, person: null },
       nobody: { kind, because },
     });
     const busy = look('14:50', 'busy', 'Ines clips on R-2418 until 14:57. Nobody else is there.');
-    const closed = ['18:50', '19:50', '20:50'].map((clock) => look(clock, 'away', 'The workshop is closed then.'));
-    const withLooks = (lookIns: (typeof busy)[]) => ({
-      ...plan,
-      charges: plan.charges.map((one) => (one.card.title === 'R-2411' ? { ...one, lookIns } : one)),
+    const openWith = (lookIns: (typeof busy)[]) =>
+      open('foreman', 1440, {
+        ...plan,
+        charges: plan.charges.map((one) => (one.card.title === 'R-2411' ? { ...one, lookIns } : one)),
+      });
+
+    it('with the reason of each, those of one reason together', async () => {
+      const closed = ['18:50', '19:50', '20:50'].map((clock) => look(clock, 'away', 'The workshop is closed then.'));
+      openWith([...closed, busy]);
+      const words = (await part('Nobody is there to look in')).getAllByText(/asks for a look-in/);
+      expect(words.map(({ textContent }) => textContent.replaceAll('\u00a0', ' '))).toEqual([
+        'R-2411 on A2 asks for a look-in at 14:50. Ines clips on R-2418 until 14:57. Nobody else is there.',
+        'R-2411 on A2 asks for a look-in at 18:50. The workshop is closed then. So it is with 2 more after it.',
+      ]);
     });
-    open('foreman', 1440, withLooks([...closed, busy]));
-    const words = (await part('Nobody is there to look in')).getAllByText(/asks for a look-in/);
-    expect(words.map((one) => one.textContent)).toEqual([
-      'R-2411 on A2 asks for a look-in at 14:50. Ines clips on R-2418 until 14:57. Nobody else is there.',
-      'R-2411 on A2 asks for a look-in at 18:50. The workshop is closed then. So it is with 2 more after it.',
-    ]);
-    cleanup();
-    open('foreman', 1440, withLooks([busy]));
-    expect((await part('Nobody is free to look in')).getByText(/Ines clips on R-2418 until 14:57/)).toBeTruthy();
+
+    it('as nobody’s who is free where whoever is there has their hands full', async () => {
+      openWith([busy]);
+      expect((await part('Nobody is free to look in')).getByText(/Ines clips on R-2418 until 14:57/)).toBeTruthy();
+    });
   });
 
   it('names an alarm that nobody has, who is free, and gives it to them', async () => {
