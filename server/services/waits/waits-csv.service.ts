@@ -11,7 +11,8 @@ import type { Deps, Member } from '../../deps';
 import { csvBegin, csvLines, type CsvCell } from '../csv';
 import { waitRowDto, waitRowPage } from './wait-charges.service';
 import { waitAsk, type WaitAsk } from './wait-filter';
-import { waitNames, wayNames } from './wait-names';
+import { dimensionNames, wayNames } from '@/shared/contract/wait-names';
+import { waitNames } from './wait-names';
 import { localMinute, waitGroups, waits } from './waits.service';
 
 const CSV_PAGE = 500;
@@ -56,19 +57,10 @@ const spreadCells = (one: WaitSpreadDto): CsvCell[] => [
   ...[minutes(one.medianS), minutes(one.p90S), fewCell(one.few)],
 ];
 
-const dimensionTitles: Record<WaitDimension, string> = {
-  'module-type': 'Module type',
-  charger: 'Charger',
-  channel: 'Channel',
-  technician: 'Technician',
-  way: 'Way',
-  weekday: 'Weekday',
-};
-
 function groupTable(by: WaitDimension, groups: readonly WaitGroupDto[]): CsvCell[][] {
   const planHead = ['Against the plan, min', 'Mean against the plan, min', 'Middle error, min', 'Inside band, %'];
   return [
-    [dimensionTitles[by], ...spreadHead, ...planHead],
+    [dimensionNames[by], ...spreadHead, ...planHead],
     ...groups.map((group) => [
       group.name,
       ...spreadCells(group),

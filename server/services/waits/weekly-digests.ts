@@ -23,7 +23,8 @@ import { newId } from '../ids';
 import { inTransaction } from '../unit-of-work';
 import { digestFacts, type WeekFigures } from './digest-facts';
 import { digestLetter, digestToken } from './digest-letter';
-import { stageNames, waitNames } from './wait-names';
+import { stageNames } from '@/shared/contract/wait-names';
+import { waitNames } from './wait-names';
 
 /** Hour of Monday by the workshop's clock at which the last week is told. */
 const HOUR = 7;

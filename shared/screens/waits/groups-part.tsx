@@ -11,7 +11,7 @@ import { Loading } from '@/shared/ui/states/loading';
 import { makeStyles } from '@/shared/ui/theme/make-styles';
 import { GroupTable } from '@/shared/ui/waits/group-table';
 import { keyOfDimension } from '@/shared/ui/waits/wait-address';
-import { dimensionNames } from '@/shared/ui/waits/wait-words';
+import { dimensionNames } from '@/shared/contract/wait-names';
 import type { Csv } from './use-csv';
 import type { WaitAddressHeld } from './use-wait-address';
 

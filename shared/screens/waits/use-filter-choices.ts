@@ -3,7 +3,7 @@ import { useModuleTypes } from '@/shared/client/module-types';
 import { usePeople } from '@/shared/client/people';
 import type { SelectOption } from '@/shared/ui/primitives/select';
 import type { AddressKey, WaitParams } from '@/shared/ui/waits/wait-address';
-import { dimensionNames, stageNames, wayNames, weekdayNames } from '@/shared/ui/waits/wait-words';
+import { dimensionNames, stageNames, wayNames, weekdayNames } from '@/shared/contract/wait-names';
 
 export interface FilterChoice {
   key: AddressKey;

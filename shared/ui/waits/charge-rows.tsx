@@ -4,7 +4,8 @@ import { durationTable } from '../format/duration';
 import { useFormats } from '../format/formats';
 import { Table } from '../primitives/table';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { againstPlan, wayNames } from './wait-words';
+import { wayNames } from '@/shared/contract/wait-names';
+import { againstPlan } from './wait-words';
 
 const table = (seconds: number): string => durationTable(seconds, 'minute');
 

@@ -5,7 +5,8 @@ import { Duration } from '../primitives/num';
 import { Table, type Column } from '../primitives/table';
 import { Txt } from '../primitives/txt';
 import { useBreakpoint } from '../theme/use-breakpoint';
-import { againstPlan, chargesWord, dimensionNames, fewWords, hoursWord, usedShare } from './wait-words';
+import { dimensionNames } from '@/shared/contract/wait-names';
+import { againstPlan, chargesWord, fewWords, hoursWord, usedShare } from './wait-words';
 
 const unless = (group: WaitGroupDto, text: () => string): string => (group.few ? '–' : text());
 const usedText = (group: WaitGroupDto): string => {

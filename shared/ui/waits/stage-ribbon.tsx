@@ -9,7 +9,8 @@ import { Txt } from '../primitives/txt';
 import { WaitRibbon } from '../wait-ribbon/wait-ribbon';
 import { stageLabelPlaces } from './stage-label-places';
 import { useWidth } from './use-width';
-import { fewWords, stageNames } from './wait-words';
+import { stageNames } from '@/shared/contract/wait-names';
+import { fewWords } from './wait-words';
 
 const kinds = { queue: 'queue', charging: 'cc', tapering: 'taper', resting: 'rest', 'check-due': 'check' } as const;
 

@@ -1,6 +1,6 @@
 import type { WaitDimension, WaitsQuery } from '@/shared/contract/waits';
 import { addDays, daysBetween } from '../format/zone';
-import { dimensionNames, stageNames, wayNames, weekdayNames } from './wait-words';
+import { dimensionNames, stageNames, wayNames, weekdayNames } from '@/shared/contract/wait-names';
 
 /** What the address of the waits can hold. Everything on the page follows from it: a reload or a sent link shows the same. */
 export const addressKeys = [

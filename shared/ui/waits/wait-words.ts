@@ -1,37 +1,5 @@
-import type { WaitDimension, WaitStage, WaitsQuery } from '@/shared/contract/waits';
 import { NBSP } from '../format/marks';
 import { fixed } from '../format/number';
-
-export const stageNames: Record<WaitStage, string> = {
-  queue: 'Queue',
-  charging: 'Charging',
-  tapering: 'Tapering',
-  resting: 'Resting',
-  'check-due': 'Check due',
-};
-export const wayNames: Record<NonNullable<WaitsQuery['way']>, string> = {
-  terminals: 'Through the terminals',
-  'group-by-group': 'Group by group',
-  paralleled: 'Groups paralleled',
-  resistor: 'Through a resistor',
-};
-export const weekdayNames: Record<NonNullable<WaitsQuery['weekday']>, string> = {
-  '1': 'Monday',
-  '2': 'Tuesday',
-  '3': 'Wednesday',
-  '4': 'Thursday',
-  '5': 'Friday',
-  '6': 'Saturday',
-  '7': 'Sunday',
-};
-export const dimensionNames: Record<WaitDimension, string> = {
-  'module-type': 'Module type',
-  charger: 'Charger',
-  channel: 'Channel',
-  technician: 'Technician',
-  way: 'Way',
-  weekday: 'Weekday',
-};
 
 /** Under so many charges a middle value says little, and is not shown. */
 export const fewCharges = 5;
