@@ -66,6 +66,8 @@ export interface PlanBlockDto extends Span {
   repairId: string | null;
   workId: string | null;
   stint: { id: string; state: StintState } | null;
+  /** Of a fill that does not fit any more: '12 min too long: clip off R-2411 at 14:40'; null: it fits. */
+  tooLong: string | null;
   place: string | null;
 }
 

@@ -13,6 +13,7 @@ import { endsOf, handsOf, type HandBlock } from './hands';
 import { freeIn, laidOut } from './lines';
 import { common, overlaps, type Stretch } from './spans';
 import { stintSpan } from './stint-spans';
+import { tooLongText } from './too-long';
 
 /** What fitting a ready module takes where the workshop has not said, min. A guess of the trade. */
 const FIT_MINUTES = 60;
@@ -91,7 +92,7 @@ export function personDto(ground: BenchGround, all: Lines, line: PersonLine): Pl
     common(stretches, [days]).map(({ from, to }) => ({ from: toInstant(from), to: toInstant(to) }));
   const blocks = [
     ...hands.map((block) => ({ span: block, dto: handDto(block) })),
-    ...stints.map(({ stint, span }) => ({ span, dto: fillDto(ground, stint, span) })),
+    ...stints.map(({ stint, span }) => ({ span, dto: fillDto(ground, line, stint, span) })),
   ];
   return {
     person: { id: person.id, name: person.name },
@@ -121,12 +122,14 @@ function isShown({ days, workshop }: BenchGround, day: string): boolean {
 }
 
 const handDto = ({ from, to, kind, title, chargeId, repairId, place }: HandBlock): PlanBlockDto => ({
-  ...{ kind, title, chargeId, repairId, place, workId: null, stint: null },
+  ...{ kind, title, chargeId, repairId, place, workId: null, stint: null, tooLong: null },
   from: toInstant(from),
   to: toInstant(to),
 });
 
-function fillDto({ work, places, repairs }: BenchGround, stint: WorkStint, { from, to }: Stretch): PlanBlockDto {
+function fillDto(ground: BenchGround, { hands, person }: PersonLine, stint: WorkStint, span: Stretch): PlanBlockDto {
+  const { work, places, repairs } = ground;
+  const { from, to } = span;
   const piece = work.get(stint.workId);
   const number = repairs.get(piece?.repairId ?? '')?.repair.number;
   return {
@@ -136,6 +139,7 @@ function fillDto({ work, places, repairs }: BenchGround, stint: WorkStint, { fro
     repairId: piece?.repairId ?? null,
     workId: stint.workId,
     stint: { id: stint.id, state: stint.state },
+    tooLong: tooLongText(ground, stint, span, hands, person.present),
     place: places.get(stint.placeId ?? '')?.name ?? null,
     from: toInstant(from),
     to: toInstant(to),

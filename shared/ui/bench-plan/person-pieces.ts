@@ -26,6 +26,7 @@ export function blockWords(block: PlanBlockDto, wording: Wording): string {
     block.place,
     span(block.from, block.to, wording),
     state,
+    block.tooLong,
   ]
     .filter((part) => part !== null)
     .join(', ');
@@ -72,6 +73,7 @@ export function personDocks(
       kind: block.kind === 'fill' ? 'fill' : 'own',
       title: titleIn(roomOf(block), block.kind === 'fill' ? 'fill' : 'own', titlesOf(block)),
       label: blockWords(block, wording),
+      alarm: block.tooLong !== null,
     })),
     ...person.breaks.map((pause, index): Dock => ({
       key: `p${index}`,

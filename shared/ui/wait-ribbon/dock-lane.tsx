@@ -13,6 +13,8 @@ export interface Dock {
   title: string;
   /** What readers hear: 'Hose, R-2420, 14:13 to 14:48'. */
   label?: string;
+  /** It does not fit any more; its label says by how much. */
+  alarm?: boolean;
   onPress?: () => void;
 }
 
@@ -39,13 +41,20 @@ export function DockLane({
   const toX = (s: number) => ((s - fromS) / (toS - fromS)) * width;
   return (
     <View role="list" aria-label={laneLabel} style={{ width, height }}>
-      {docks.map(({ key, kind, title, label, onPress, ...at }) => {
+      {docks.map(({ key, kind, title, label, alarm = false, onPress, ...at }) => {
         const left = Math.max(0, toX(at.fromS));
         const wide = Math.max(0, Math.min(width, toX(at.toS)) - left - 1);
         const words = label ?? title;
         const dock = (
           <View
-            style={[styles.dock, styles[kind], { height }, wide < 64 && styles.narrow, kind === 'free' && styles.tight]}
+            style={[
+              styles.dock,
+              styles[kind],
+              alarm && styles.alarm,
+              { height },
+              wide < 64 && styles.narrow,
+              kind === 'free' && styles.tight,
+            ]}
           >
             {wide < wordRoom ? null : (
               <Txt
@@ -108,6 +117,7 @@ const useStyles = makeStyles(({ colors }) => ({
     borderStyle: 'dashed',
     backgroundColor: colors.ground,
   },
+  alarm: { borderColor: colors.alarm },
   own: { backgroundColor: colors.well },
   // A line of now behind it would go through its word.
   break: {

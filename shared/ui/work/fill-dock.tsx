@@ -51,6 +51,11 @@ export function FillDock({
           </View>
           <Link kind="small" align="right" title="look" label={`Look at ${block.title}`} onPress={onOpen} />
         </View>
+        {block.tooLong && !done ? (
+          <Txt kind="small" bold tone="alarm">
+            {block.tooLong}
+          </Txt>
+        ) : null}
         {problem ? (
           <Txt kind="small" bold tone="alarm" role="alert">
             {problem}

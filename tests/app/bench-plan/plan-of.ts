@@ -11,6 +11,7 @@ const block = (from: string, to: string, title: string, kind: PlanBlockDto['kind
   repairId: null,
   workId: kind === 'fill' ? title : null,
   stint: kind === 'fill' ? { id: title, state: 'taken' } : null,
+  tooLong: null,
   place: null,
 });
 export const free = (from: string, to: string): PlanPersonDto['free'][number] => ({

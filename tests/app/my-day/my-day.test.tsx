@@ -36,7 +36,16 @@ const open = (day: MyDayDto | null, answers: object = {}, params: Record<string,
   draw(<MyDay />);
 };
 const hand = (kind: PlanBlockDto['kind'], title: string, from: string, to: string): PlanBlockDto => ({
-  ...{ kind, title, chargeId: title.split(' ').at(-1)!, repairId: null, workId: null, stint: null, place: 'A2' },
+  ...{
+    kind,
+    title,
+    chargeId: title.split(' ').at(-1)!,
+    repairId: null,
+    workId: null,
+    stint: null,
+    tooLong: null,
+    place: 'A2',
+  },
   from: iso(from),
   to: iso(to),
 });
@@ -145,6 +154,13 @@ describe('my day', () => {
     fireEvent.click(screen.getByRole('button', { name: /^The day after/ }));
     fireEvent.click(screen.getByRole('button', { name: 'Today' }));
     expect(vi.mocked(router.setParams).mock.calls.flat()).toEqual([{ day: '2026-06-11' }, { day: '' }]);
+  });
+
+  it('says of a fill that does not fit any more by how many minutes', async () => {
+    const tooLong = '12\u00a0min too long: clip off R-2411 at 15:13';
+    open(myDay({ blocks: [fill('taken', { tooLong })] }));
+    const dock = within(await screen.findByRole('group', { name: 'Brake bleed R-2416' }));
+    expect(dock.getByText(/^12\smin too long: clip off R-2411 at 15:13$/)).toBeTruthy();
   });
 
   it('saves its day sheet, and says why where it could not', async () => {

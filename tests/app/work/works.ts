@@ -129,6 +129,7 @@ export const fill = (state: 'taken' | 'begun' | 'done', more: Partial<PlanBlockD
   repairId: 'r16',
   workId: 'w1',
   stint: { id: 's1', state },
+  tooLong: null,
   place: 'bay 4',
   from: iso('14:55'),
   to: iso('15:25'),

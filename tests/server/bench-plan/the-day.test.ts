@@ -188,6 +188,27 @@ describe('what fits', () => {
   });
 });
 
+describe('a fill that was taken', () => {
+  it('says by how many minutes it does not fit any more: clips that came into it, hours that end before it', async () => {
+    const body = workForm({ title: 'Brake bleed', likelyMinutes: '20', longMinutes: '30' });
+    const foremans = bench.as('foreman');
+    const piece = (await foremans.post('/api/work', body).set('Idempotency-Key', key()).expect(201)).body as {
+      id: string;
+    };
+    const wish = { personId: technician().id, from: clock('14:30') };
+    await foremans.post(`/api/work/${piece.id}/take`, wish).set('Idempotency-Key', key()).expect(200);
+    const fill = async () => (await lineOf(technician().id)).blocks.find(({ kind }) => kind === 'fill')!;
+    const planned = await fill();
+    expect([timeOf(planned.from), planned.tooLong]).toEqual(['14:30', null]);
+    const end = at(planned.to);
+    const minutesUntil = (time: string) => (end - at(clock(time))) / minute;
+    await hoursOf(bench, technician().id, { hours: Array.from({ length: 7 }, () => ({ from: '08:00', to: '14:50' })) });
+    expect((await fill()).tooLong).toBe(`${minutesUntil('14:50')}\u00a0min too long: working hours end at 14:50`);
+    await queued(bench, { spareId: await bench.spare('S-3'), repairRef: 'R-3' }, 'A1', clock('14:40'));
+    expect((await fill()).tooLong).toBe(`${minutesUntil('14:40')}\u00a0min too long: clip on R-3 at 14:40`);
+  });
+});
+
 describe('my day', () => {
   it('is one’s own line', async () => {
     const day = (await bench.as('technician').get('/api/bench-plan/my-day').expect(200)).body as MyDayDto;

@@ -233,6 +233,15 @@ describe('the lane of a person', () => {
     expect(free(500).label).toBe('37 min free, 14:53 to 15:30');
   });
 
+  it('marks a fill that does not fit any more, and says by how many minutes', () => {
+    const tooLong = '12\u00a0min too long: clip off R-2411 at 14:40';
+    const blocks = marek.blocks.map((block) => (block.kind === 'fill' ? { ...block, tooLong } : block));
+    const docks = personDocks({ ...marek, blocks }, axis, now, wording);
+    expect(docks.filter(({ alarm }) => alarm).map(({ label }) => label)).toEqual([
+      `Fill: Door lock R-2419, 13:12 to 14:52, ${tooLong}`,
+    ]);
+  });
+
   it('lets a free stretch be chosen only while it is ahead and 48 px wide', () => {
     const docks = (instant: number) => personDocks(marek, axis, instant, wording, () => {});
     expect(docks(now).at(-1)!.onPress).toBeDefined();
