@@ -1,6 +1,7 @@
 import compression from 'compression';
 import express, { type Express } from 'express';
 import type { Deps } from './deps';
+import { closeUnread } from './middleware/close-unread';
 import { metroProxy } from './middleware/metro-proxy';
 import { refuseAnnounced } from './middleware/announced-size';
 import { measure } from './middleware/measure';
@@ -13,6 +14,9 @@ import { webApp } from './middleware/web-app';
 import { routesModules } from './routes/all';
 import { makeRegistrar } from './routes/register-route';
 
+/** Largest body of a request that is not a file. */
+const mostJsonBytes = 256 * 1024;
+
 /** The HTTP application: API, health, and the web app's files. Opens no port and no database. */
 export function createApp(deps: Deps): Express {
   const { config } = deps;
@@ -23,6 +27,7 @@ export function createApp(deps: Deps): Express {
   app.set('query parser', 'simple');
   app.use(requestLog(deps.log));
   app.use(measure(deps.metrics));
+  app.use(closeUnread);
   app.use(unbelievedProxy(deps.log, config.proxyHops));
 
   const web = webApp(config.webDir);
@@ -36,8 +41,8 @@ export function createApp(deps: Deps): Express {
   app.use(sameOrigin(config.publicUrl));
   // A board of twenty charges is tens of kilobytes of JSON to a phone in a metal hall.
   app.use('/api', compression());
-  app.use('/api', refuseAnnounced(4 * 1024 * 1024));
-  app.use('/api', express.json({ limit: '256kb', strict: false }));
+  app.use('/api', refuseAnnounced(mostJsonBytes));
+  app.use('/api', express.json({ limit: mostJsonBytes, strict: false }));
 
   const router = express.Router();
   const route = makeRegistrar(router, deps);

@@ -108,6 +108,8 @@ export async function startMortal(
     async stop() {
       stopping = true;
       while (next) await next;
+      // One that still starts does not yet know how to end properly.
+      await life.ready;
       life.child.kill('SIGTERM');
       return life.gone;
     },
