@@ -71,3 +71,7 @@ export async function resumeDigest(manager: EntityManager, workshopId: string, p
 /** Of whoever it is, for a link that needs no signing in. */
 export const personById = (manager: EntityManager, id: string): Promise<Person | null> =>
   manager.findOneBy(Person, { id });
+
+/** Of all letters that were written in a workshop. */
+export const digestIds = async (manager: EntityManager, workshopId: string): Promise<string[]> =>
+  (await manager.find(WeeklyDigest, { where: { workshopId }, select: { id: true } })).map(({ id }) => id);

@@ -6,6 +6,7 @@ import { notFound } from '../errors/domain-error';
 import { alertsById } from '../repositories/alerts.repository';
 import { listPeople } from '../repositories/people.repository';
 import { pushDevicesOf } from '../repositories/push-devices.repository';
+import { digestIds } from '../repositories/weekly-digest.repository';
 import { addPushDevice } from './alert-settings.service';
 import { toInstant } from './instants';
 
@@ -15,7 +16,7 @@ function outsideOf({ outside }: Deps): Outside {
 }
 
 /**
- * Everything that was sent for alerts of the workshop of who asks, newest first.
+ * Everything that was sent for alerts of the workshop of who asks, and its weekly letters, newest first.
  * @throws DomainError 404 where this server sends to the real services
  */
 export async function mailbox(deps: Deps, member: Member): Promise<MailboxDto> {
@@ -23,6 +24,7 @@ export async function mailbox(deps: Deps, member: Member): Promise<MailboxDto> {
   const { manager } = deps.dataSource;
   const { workshopId } = member;
   const alerts = await alertsById(manager, workshopId, [...new Set(sent.map(({ alertId }) => alertId))]);
+  const digests = new Set((await digestIds(manager, workshopId)).map((id) => `digest.${id}`));
   const people = await listPeople(manager, workshopId);
   const devices = await pushDevicesOf(
     manager,
@@ -39,8 +41,10 @@ export async function mailbox(deps: Deps, member: Member): Promise<MailboxDto> {
   const own = phoneToken(member.sessionId);
   return {
     since: toInstant(since),
-    entries: marked(sent.filter(({ alertId }) => alerts.has(alertId)))
-      .map((one) => entryOf(one, names.get(one.to) ?? null))
+    entries: marked(sent.filter(({ alertId }) => alerts.has(alertId) || digests.has(alertId)))
+      .map((one) =>
+        entryOf({ ...one, alertId: alerts.has(one.alertId) ? one.alertId : null }, names.get(one.to) ?? null),
+      )
       .reverse(),
     hasPhone: devices.some(({ address }) => address === own),
   };
@@ -57,7 +61,10 @@ function marked(sent: readonly SentOut[]): (SentOut & { again: boolean })[] {
   });
 }
 
-const entryOf = ({ at, to, ...one }: SentOut & { again: boolean }, name: string | null): MailboxEntryDto => ({
+const entryOf = (
+  { at, to, ...one }: Omit<SentOut, 'alertId'> & Pick<MailboxEntryDto, 'again' | 'alertId'>,
+  name: string | null,
+): MailboxEntryDto => ({
   ...one,
   at: toInstant(at),
   to: { name, address: to },

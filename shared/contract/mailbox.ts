@@ -9,7 +9,8 @@ export interface MailboxEntryDto {
   way: SentWay;
   /** Whose mailbox or device it is; null: it is nobody's any more. */
   to: { name: string | null; address: string };
-  alertId: string;
+  /** Null: a letter of no alert. */
+  alertId: string | null;
   turn: number;
   title: string;
   text: string;

@@ -49,9 +49,10 @@ const PHONE = 'ExponentPushToken[demo-';
 
 type Message = Omit<SentOut, 'number' | 'at'>;
 
-/** 'alert.turn@domain' in angle brackets, as a letter is marked. */
+/** 'alert.turn@domain' in angle brackets, as a letter is marked; one of no alert has an id of its own there. */
 function ofLetter({ to, headers, parts }: CaughtLetter): Message {
-  const [, alertId = '', turn = '0'] = /^<(.+)\.(\d+)@/.exec(headers['message-id'] ?? '') ?? [];
+  const [, whole = ''] = /^<(.+)@/.exec(headers['message-id'] ?? '') ?? [];
+  const [, alertId = whole, turn = '0'] = /^(?!digest\.)(.+)\.(\d+)$/.exec(whole) ?? [];
   return {
     way: 'e-mail',
     to: to.join(', '),

@@ -15,12 +15,14 @@ export function digestLetter(
   const title = `Waits of ${week}`;
   const footer = `${workshop}. Three facts of the week that changed most.`;
   const stop = 'No more of these letters';
+  const rest = 'Open Bidewell under Waits for the rest.';
+  const switchedOff = 'They are switched off in Bidewell under More.';
   const text = [
     title,
     ...facts.map((fact) => `– ${fact}`),
-    links === null ? 'Open Bidewell under Waits for the rest.' : `Open the waits: ${links.waits}`,
+    links === null ? rest : `Open the waits: ${links.waits}`,
     footer,
-    links === null ? 'They are switched off in Bidewell under More.' : `${stop}: ${links.stop}`,
+    links === null ? switchedOff : `${stop}: ${links.stop}`,
   ];
   const paragraph = (html: string, style = ''): string => `<p style="margin:0 0 12px;${style}">${html}</p>`;
   const small = 'font-size:13px;color:#4a5654';
@@ -30,9 +32,9 @@ export function digestLetter(
     '<body style="margin:0;padding:24px;font:16px/1.5 sans-serif;color:#16201f;background:#ffffff">',
     `<h1 style="margin:0 0 12px;font-size:22px">${escaped(title)}</h1>`,
     `<ul style="margin:0 0 12px;padding-left:20px">${facts.map((fact) => `<li>${escaped(fact)}</li>`).join('')}</ul>`,
-    ...(links === null ? [] : [paragraph(`<a href="${escaped(links.waits)}">Open the waits in Bidewell</a>`)]),
+    paragraph(links === null ? rest : `<a href="${escaped(links.waits)}">Open the waits in Bidewell</a>`),
     paragraph(escaped(footer), small),
-    ...(links === null ? [] : [paragraph(`<a href="${escaped(links.stop)}">${stop}</a>`, small)]),
+    paragraph(links === null ? switchedOff : `<a href="${escaped(links.stop)}">${stop}</a>`, small),
     '</body></html>',
   ].join('\n');
   return { subject: title, text: `${text.join('\n\n')}\n`, html };

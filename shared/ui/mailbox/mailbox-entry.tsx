@@ -75,7 +75,7 @@ export function MailboxEntry({ entry, now }: { entry: MailboxEntryDto; now: numb
             )}
           </View>
           <Txt kind="small" tone="ink2" style={styles.long}>
-            {`To ${to.address}. Alert ${alertId}, turn ${turn}.`}
+            {`To ${to.address}.${alertId === null ? '' : ` Alert ${alertId}, turn ${turn}.`}`}
           </Txt>
         </View>
       ) : null}

@@ -1,4 +1,4 @@
-import { View } from 'react-native';
+import { StyleSheet, View } from 'react-native';
 import { Rect, Svg } from 'react-native-svg';
 import type { RepairSeasonDto, SeasonPart } from '@/shared/contract/repair-season';
 import { ChartFrame } from '../charts/chart-frame';
@@ -42,7 +42,14 @@ export function SeasonPicture({
       <ChartFrame
         heading={season.over ? 'From booking to hand-over' : 'From booking until now'}
         note={`Most of the working hours: ${long.map(({ part, openSeconds }) => `${names[part]} ${duration(openSeconds, 'minute')}`).join(', ')}.`}
-        picture={width === 0 ? null : <Ribbon season={season} names={names} width={width} />}
+        picture={
+          width === 0 ? null : (
+            <View style={{ rowGap: 8 }}>
+              <Ribbon season={season} names={names} width={width} />
+              <Key totals={totals} names={names} />
+            </View>
+          )
+        }
         table={
           <Table
             label="Where the time of the repair went"
@@ -67,6 +74,30 @@ export function SeasonPicture({
           {`Of the waits for its module, in working hours: ${duration(usedS, 'minute')} used, ${duration(lostS, 'minute')} lost.`}
         </Txt>
       ) : null}
+    </View>
+  );
+}
+
+/** What the colours are, and how long each was in all. */
+function Key({ totals, names }: Pick<RepairSeasonDto, 'totals'> & { names: Readonly<Record<SeasonPart, string>> }) {
+  const { colors } = useTheme();
+  return (
+    <View style={styles.key} aria-hidden>
+      {totals.map(({ part, seconds }) => (
+        <View key={part} style={styles.part}>
+          <Svg width={12} height={16} viewBox="0 0 12 16" fill="none">
+            <Rect x={0} y={15} width={12} height={1} fill={colors.edge} />
+            <Rect
+              x={0}
+              y={15 - looks[part].high * 14}
+              width={12}
+              height={looks[part].high * 14}
+              fill={colors[looks[part].color]}
+            />
+          </Svg>
+          <Txt kind="small">{`${names[part]} ${duration(seconds, 'minute')}`}</Txt>
+        </View>
+      ))}
     </View>
   );
 }
@@ -112,3 +143,8 @@ function Ribbon({
     </Svg>
   );
 }
+
+const styles = StyleSheet.create({
+  key: { flexDirection: 'row', flexWrap: 'wrap', columnGap: 16, rowGap: 4 },
+  part: { flexDirection: 'row', alignItems: 'center', columnGap: 6 },
+});
