@@ -2,6 +2,7 @@ import compression from 'compression';
 import express, { type Express } from 'express';
 import type { Deps } from './deps';
 import { metroProxy } from './middleware/metro-proxy';
+import { refuseAnnounced } from './middleware/announced-size';
 import { measure } from './middleware/measure';
 import { notHere, problems } from './middleware/problems';
 import { requestLog } from './middleware/request-log';
@@ -35,6 +36,7 @@ export function createApp(deps: Deps): Express {
   app.use(sameOrigin(config.publicUrl));
   // A board of twenty charges is tens of kilobytes of JSON to a phone in a metal hall.
   app.use('/api', compression());
+  app.use('/api', refuseAnnounced(4 * 1024 * 1024));
   app.use('/api', express.json({ limit: '256kb', strict: false }));
 
   const router = express.Router();

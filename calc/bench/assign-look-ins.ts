@@ -14,7 +14,7 @@ interface Round {
  *
  * Where all who are there have another at that time, others' look-ins are handed on to make one of them free. Where that
  * does not help either, one of them does both on the same round: who has the fewest at that time, the owner before
- * others. Nobody there: nobody gets it (`personId` null), and it still stands in the list.
+ * others. Where nobody can at all, nobody gets it (`personId` null), and it still stands in the list with the reason.
  *
  * @param lookInS how long one takes, s
  * @returns one line for each that is wanted, in their order
@@ -44,7 +44,11 @@ export function assignLookIns(
     there[0]!.mine.push(one);
   }
   const personOf = new Map(rounds.flatMap(({ person, mine }) => mine.map(({ id }) => [id, person.id] as const)));
-  return wanted.map(({ id }) => ({ lookInId: id, personId: personOf.get(id) ?? null }));
+  return wanted.map(({ id, atS }) => {
+    const personId = personOf.get(id) ?? null;
+    const somebodyThere = people.some((person) => isPresent(person, atS, lookInS));
+    return { lookInId: id, personId, nobody: personId !== null ? null : somebodyThere ? 'busy' : 'away' };
+  });
 }
 
 /** Gives it to somebody who is free, or makes somebody free whose others at that time can be handed on; false: nobody. */
@@ -88,7 +92,10 @@ const atOnce = ({ atS }: WantedLookIn, { mine }: Round, lookInS: number): Wanted
   mine.filter((one) => Math.abs(one.atS - atS) < lookInS);
 
 /** Present from its beginning to its end, and hands free. */
-function canGo({ present, busy }: LookInPerson, atS: number, lookInS: number): boolean {
+function canGo(person: LookInPerson, atS: number, lookInS: number): boolean {
   const overlaps = ({ fromS, toS }: Stretch) => fromS < atS + lookInS && atS < toS;
-  return present.some(({ fromS, toS }) => fromS <= atS && atS + lookInS <= toS) && !busy.some(overlaps);
+  return isPresent(person, atS, lookInS) && !person.busy.some(overlaps);
 }
+
+const isPresent = ({ present }: LookInPerson, atS: number, lookInS: number): boolean =>
+  present.some(({ fromS, toS }) => fromS <= atS && atS + lookInS <= toS);

@@ -140,6 +140,8 @@ export interface LookInPerson {
 
 export interface LookInGiven {
   lookInId: string;
-  /** Null: nobody is there. */
+  /** Null: nobody can. */
   personId: string | null;
+  /** Why nobody can: 'away', nobody is present all through it; 'busy', whoever is has their hands in something. */
+  nobody: 'away' | 'busy' | null;
 }

@@ -20,6 +20,7 @@ import { writeEquipment } from './equipment';
 import { demoHours, demoZone } from './hours';
 import { liveOpenCharges } from './open-charges';
 import { writePast } from './past';
+import { livePastWork } from './past-work';
 import { liveOtherWork } from './other-work';
 import { demoPeople, invitedEmail, memberOf, type DemoPerson } from './people';
 import { bookUnread, letSourcesDisagree, proveOne, writePackTypes } from './repairs';
@@ -53,10 +54,14 @@ export async function seedDemo(deps: Deps): Promise<void> {
     outbox: { ...deps.outbox, poke: () => {} },
   };
   try {
+    // Hundreds of small commits, none of which is worth waiting for the disk: a seeding that is cut off is begun anew.
+    await deps.dataSource.query('PRAGMA synchronous = NORMAL');
     await writeDemo(quiet, startedAt);
   } catch (error) {
     await removeDemo(deps);
     throw error;
+  } finally {
+    await deps.dataSource.query('PRAGMA synchronous = FULL');
   }
   deps.log.info({ ms: deps.clock.now() - startedAt, passwords: passwordsFile(deps.config.dataDir) }, 'demo seeded');
 }
@@ -88,6 +93,7 @@ async function writeDemo(deps: Deps, now: number): Promise<void> {
     return made;
   });
   const crew = await writeCrew(deps, zone, now, setUpAt);
+  await livePastWork(deps, zone);
   await proveOne(deps, now);
   await liveOpenCharges(deps, now);
   await letSourcesDisagree(deps, now);

@@ -32,6 +32,8 @@ import { Workshop } from './workshop';
 @Index('ix_charge_spare', ['workshopId', 'spareId'])
 @Index('ix_charge_neighbour', ['workshopId', 'neighbourSpareId'])
 @Index('ix_charge_repair', ['workshopId', 'repairId'])
+// Every act on a charge asks for the one that went on from it.
+@Index('ix_charge_top_up', ['workshopId', 'topUpOf'], { where: 'top_up_of IS NOT NULL' })
 @Index('uq_charge_open_spare', ['spareId'], {
   unique: true,
   where: "stage IN ('planned','queued','charging','discharging','tapering','resting','check-due','ready','held')",

@@ -16,6 +16,7 @@ import { BenchPlan1765900000000 } from './1765900000000-bench-plan';
 import { AlertDelivery1767000000000 } from './1767000000000-alert-delivery';
 import { ChannelFault1767100000000 } from './1767100000000-channel-fault';
 import { FinishedWaits1767110000000 } from './1767110000000-finished-waits';
+import { ChargeTopUp1767310000000 } from './1767310000000-charge-top-up';
 import { WeeklyDigest1767200000000 } from './1767200000000-weekly-digest';
 
 export const migrations = [
@@ -37,4 +38,5 @@ export const migrations = [
   ChannelFault1767100000000,
   FinishedWaits1767110000000,
   WeeklyDigest1767200000000,
+  ChargeTopUp1767310000000,
 ];

@@ -6,6 +6,7 @@ import { listStints } from '../repositories/work.repository';
 import { common, lengthOf, united, type Stretch } from './bench-plan/spans';
 import { stintSpan } from './bench-plan/stint-spans';
 import type { ChargeFile } from './charge-file';
+import { SWAP_REASON } from './charge-steps';
 import { toInstant } from './instants';
 import { packVerdict } from './pack-numbers';
 import { presentSpans } from './presence';
@@ -112,18 +113,34 @@ function repairMarks({ repair, readings, charges, fittedAsItIs }: Parameters<typ
 }
 
 /** The stages of a charge as its instants have them; what ends it without a fit leaves the repair without one. */
-function chargeMarks({ charge }: ChargeFile): Mark[] {
-  const mark = (at: number | null, part: SeasonPart, rank: number): Mark[] =>
-    at === null ? [] : [{ at, part, chargeId: part === 'unplanned' ? null : charge.id, rank }];
+function chargeMarks({ charge, runs }: ChargeFile): Mark[] {
+  // What was reckoned before a hold goes on standing in the row, and does not come while it lasts.
+  const heldAt = charge.stage === 'held' ? charge.heldAt : null;
+  const stage = (at: number | null, part: SeasonPart, rank: number): Mark[] =>
+    at === null || at > (heldAt ?? Infinity) ? [] : [{ at, part, chargeId: charge.id, rank }];
   const endedUnfit = charge.stage === 'stopped' || charge.stage === 'shelved' ? charge.closedAt : null;
+  const unplannedAt = charge.stoppedAt ?? endedUnfit;
   return [
-    ...mark(charge.createdAt, 'queue', 2),
-    ...mark(charge.startedAt, 'charging', 3),
-    ...mark(charge.taperAt, 'tapering', 4),
-    ...mark(charge.currentEndAt, 'resting', 5),
-    ...mark(charge.checkDueAt, 'check-due', 6),
-    ...mark(charge.readyAt, 'unfitted', 7),
-    ...mark(charge.stage === 'held' ? charge.heldAt : null, 'held', 7),
-    ...mark(charge.stoppedAt ?? endedUnfit, 'unplanned', 7),
+    ...stage(charge.createdAt, 'queue', 2),
+    ...stage(charge.startedAt, 'charging', 3),
+    ...stage(charge.taperAt, 'tapering', 4),
+    ...stage(charge.currentEndAt, 'resting', 5),
+    ...stage(charge.checkDueAt, 'check-due', 6),
+    ...stage(charge.readyAt, 'unfitted', 7),
+    ...stage(heldAt, 'held', 7),
+    ...pastHolds(runs).flatMap(({ from, to }) => [
+      ...stage(from, 'held', 7),
+      ...stage(to, charge.taperAt !== null && charge.taperAt <= from ? 'tapering' : 'charging', 3),
+    ]),
+    ...(unplannedAt === null ? [] : [{ at: unplannedAt, part: 'unplanned' as const, chargeId: null, rank: 7 }]),
   ];
 }
+
+/** The holds that are over: a hold ends a stretch of current, its resume begins the next; a swap of clips is none. */
+const pastHolds = (runs: ChargeFile['runs']): Stretch[] =>
+  runs.flatMap(({ toAt, reason }, place) => {
+    const next = runs[place + 1];
+    return toAt === null || reason === SWAP_REASON || !next || next.fromAt <= toAt
+      ? []
+      : [{ from: toAt, to: next.fromAt }];
+  });

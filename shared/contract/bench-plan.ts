@@ -34,8 +34,16 @@ export interface PlanLookInDto {
   channelName: string;
   dueAt: Instant;
   doneAt: Instant | null;
-  /** Who did it, or is to; null: nobody is there. */
+  /** Who did it, or is to; null: nobody can. */
   person: PersonRef | null;
+  /** Why nobody can do one that is to come; null: somebody can, or it has been done. */
+  nobody: NobodyDto | null;
+}
+/** 'away': nobody is there; 'busy': whoever is has their hands in something that cannot be left. */
+export interface NobodyDto {
+  kind: 'away' | 'busy';
+  /** 'Ines clips on R-2418 until 14:57. Nobody else is there.' */
+  because: string;
 }
 
 export interface PlanChannelDto {

@@ -14,6 +14,7 @@ import { pastChargeRow } from '../server/waits/history';
 import { furnish, newKey, type Furnished } from '../support/furnished';
 import { makeTestServer, testNow, type TestServer } from '../support/server';
 import { benchReplay } from './replay';
+import { bareAgain, databaseMs, timeStatements, type StatementTimes } from './write-path';
 
 /** Of every 1,000 charges in the order of time: of the large workshop, of the measured one, and the rest of 48 others. */
 const CHARGES = 1_000_000;
@@ -53,7 +54,8 @@ export async function* benchWaits(): AsyncGenerator<string> {
     await dataSource.runMigrations();
     const server = await makeTestServer({ deps: { dataSource } });
     const { own, other } = await furnish(server);
-    const empty = await readings(server, own);
+    const times = timeStatements(dataSource);
+    const empty = await readings(server, own, times, file);
     const started = performance.now();
     await fill(server, own, other);
     const seconds = (performance.now() - started) / 1000;
@@ -67,8 +69,9 @@ export async function* benchWaits(): AsyncGenerator<string> {
     yield await page(server, listener, file, own, `from=${since}`, (CHARGES * OWN) / 1000, 150);
     yield await page(server, listener, file, other, `from=${since}`, (CHARGES * LARGE) / 1000, 1000);
     // Of the other workshop: its charge has as many readings as the first one had.
-    const full = await readings(server, other);
-    yield `a reading of a running charge with all its reckoning, over the API: ${full.toFixed(1)} ms; in the empty database ${empty.toFixed(1)} ms`;
+    const full = await readings(server, other, times, file);
+    yield `a reading of a running charge, its ${full.statements} statements at the driver: ${readingText(full)}`;
+    yield `the same in the empty database: ${readingText(empty)}`;
     yield `what the statistics write with a charge that becomes ready: ${(await writing(server, own)).toFixed(1)} ms (promised: 5 ms)`;
     await server.close();
   } finally {
@@ -222,20 +225,56 @@ async function page(
   return `waits of ${charges} charges: ${least('api').toFixed(0)} ms over the API (promised: ${promisedMs} ms), the same ${statements.length} statements through bare better-sqlite3 ${least('bare').toFixed(0)} ms: ${(least('api') / least('bare')).toFixed(2)} times (promised: 1.5)`;
 }
 
-/** Milliseconds of a reading of a charge that runs: the middle one of 40. */
-async function readings(server: TestServer, { workshop, chargeId }: Furnished): Promise<number> {
+interface ReadingMs {
+  statements: number;
+  /** Over the API, with all its reckoning. */
+  api: number;
+  /** Of it what the database took, its writes and its commit. */
+  database: number;
+  writes: number;
+  commit: number;
+  /** The same statements through bare better-sqlite3, as durable. */
+  bare: number;
+  bareCommit: number;
+}
+
+const readingText = (ms: ReadingMs): string =>
+  `${ms.database.toFixed(1)} ms (promised: 5 ms), of which its writes ${ms.writes.toFixed(1)} ms and the disk's commits ${ms.commit.toFixed(1)} ms; bare better-sqlite3 ${ms.bare.toFixed(1)} ms with a commit of ${ms.bareCommit.toFixed(1)} ms; over the API with all its reckoning ${ms.api.toFixed(1)} ms`;
+
+const middle = (times: readonly number[]): number => [...times].sort((one, other) => one - other)[times.length >> 1]!;
+
+/** Milliseconds of a reading of a charge that runs: the middle ones of 40. */
+async function readings(
+  server: TestServer,
+  { workshop, chargeId }: Furnished,
+  times: StatementTimes,
+  file: string,
+): Promise<ReadingMs> {
   const technician = server.agentFor('technician', workshop);
-  const times: number[] = [];
+  const api: number[] = [];
+  const acts: StatementTimes['heard'][] = [];
   for (let place = 0; place < 40; place += 1) {
     server.clock.advance(20_000);
+    times.heard = [];
     const started = performance.now();
     await technician
       .post(`/api/charges/${chargeId}/readings`, { terminalVolts: '7.6', amps: '20', celsius: '22' })
       .set('Idempotency-Key', newKey())
       .expect(200);
-    times.push(performance.now() - started);
+    api.push(performance.now() - started);
+    acts.push(times.heard);
   }
-  return times.sort((one, other) => one - other)[20]!;
+  const own = acts.map(databaseMs);
+  const again = bareAgain(file, acts);
+  return {
+    statements: middle(own.map(({ statements }) => statements)),
+    api: middle(api),
+    database: middle(own.map(({ all }) => all)),
+    writes: middle(own.map(({ writes }) => writes)),
+    commit: middle(own.map(({ commit }) => commit)),
+    bare: middle(again.map(({ all }) => all)),
+    bareCommit: middle(again.map(({ commit }) => commit)),
+  };
 }
 
 /** Milliseconds of writing a charge down, in a transaction of its own: the middle one of 40. */

@@ -2,8 +2,10 @@ import type { BenchAlternative, BenchProblem, Stretch } from '@/calc/index';
 
 /** Jobs left out, weighted tardiness, makespan: what a plan is judged by. */
 export type Judged = [unplaced: number, late: number, makespan: number];
+/** And last by the sum of its starts. */
+export type JudgedToTheEnd = [...Judged, starts: number];
 
-const better = (one: Judged, other: Judged): boolean => {
+const better = (one: readonly number[], other: readonly number[]): boolean => {
   for (const [at, value] of one.entries()) if (value !== other[at]) return value < other[at]!;
   return false;
 };
@@ -31,29 +33,29 @@ function* permutations<T>(list: readonly T[]): Generator<T[]> {
  * The best of all plans of whole times, by trying every order of all jobs with every alternative of each, and leaving
  * out. For up to five jobs.
  */
-export function bestOfAllOrders({ taken, jobs }: BenchProblem, horizon: number): Judged {
-  let best: Judged = [Infinity, Infinity, Infinity];
+export function bestOfAllOrders({ taken, jobs }: BenchProblem, horizon: number): JudgedToTheEnd {
+  let best: JudgedToTheEnd = [Infinity, Infinity, Infinity, Infinity];
   for (const order of permutations([...jobs.keys()])) {
-    const lay = (at: number, free: readonly number[], judged: Judged): void => {
+    const lay = (at: number, free: readonly number[], judged: JudgedToTheEnd): void => {
       if (at === order.length) {
         if (better(judged, best)) best = judged;
         return;
       }
       const { alternatives, dueS, weight } = jobs[order[at]!]!;
-      const [unplaced, late, makespan] = judged;
-      lay(at + 1, free, [unplaced + 1, late, makespan]);
+      const [unplaced, late, makespan, starts] = judged;
+      lay(at + 1, free, [unplaced + 1, late, makespan, starts]);
       for (const one of alternatives) {
         const start = firstWhole(one, taken, Math.max(...one.channels.map((channel) => free[channel]!)), horizon);
         if (start === Infinity) continue;
         const over = dueS === null ? 0 : weight * Math.max(0, start + one.guardS - dueS);
         const next = free.map((from, channel) => (one.channels.includes(channel) ? start + one.busyS : from));
-        lay(at + 1, next, [unplaced, late + over, Math.max(makespan, start + one.readyS)]);
+        lay(at + 1, next, [unplaced, late + over, Math.max(makespan, start + one.readyS), starts + start]);
       }
     };
     lay(
       0,
       taken.map(() => 0),
-      [0, 0, 0],
+      [0, 0, 0, 0],
     );
   }
   return best;

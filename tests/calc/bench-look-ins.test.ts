@@ -37,6 +37,18 @@ describe('who looks in', () => {
     expect(given([wanted('1', 1000)], people.slice(0, 3))).toEqual([null]);
   });
 
+  it('says why nobody can: away where nobody is there all through it, busy where all who are have their hands in something', () => {
+    const off = person('off', { present: [] });
+    const leaves = person('leaves', { present: [{ fromS: 0, toS: 1119 }] });
+    const clips = person('clips', { busy: [{ fromS: 900, toS: 1001 }] });
+    const why = (people: LookInPerson[]) => assignLookIns([wanted('1', 1000)], people, LOOK_IN_S)[0]!.nobody;
+    expect(why([])).toBe('away');
+    expect(why([off, leaves])).toBe('away');
+    expect(why([off, clips])).toBe('busy');
+    expect(why([leaves, clips])).toBe('busy');
+    expect(why([clips, person('here')])).toBeNull();
+  });
+
   it('two at once go to two people, whoever owns them; a third is done by one of them on the same round', () => {
     const list = [wanted('1', 1000, 'A'), wanted('2', 1060, 'A'), wanted('3', 1090, 'A')];
     const people = given(list, [person('A'), person('B')]);
@@ -80,6 +92,10 @@ describe('who looks in', () => {
         list.forEach(({ atS }, at) => {
           const able = staff.filter((one) => can(one, atS));
           const { personId } = result[at]!;
+          const there = staff.some(({ present }) =>
+            present.some((one) => one.fromS <= atS && atS + LOOK_IN_S <= one.toS),
+          );
+          expect(result[at]!.nobody).toBe(able.length > 0 ? null : there ? 'busy' : 'away');
           if (able.length === 0) expect(personId).toBeNull();
           else expect(able.map(({ id }) => id)).toContain(personId);
           if (personId !== null && hasAnother(personId, at)) {

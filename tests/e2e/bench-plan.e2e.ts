@@ -4,7 +4,18 @@ import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import type { BenchPlanDto, MovePlacesDto } from '@/shared/contract/bench-plan';
 import { describeInBrowser, type Visitor } from '../support/browser';
-import { button, heading, judge, member, openHouse, patience, words, type House, type ScreenSize } from './house';
+import {
+  button,
+  heading,
+  judge,
+  member,
+  openHouse,
+  patience,
+  untilMorning,
+  words,
+  type House,
+  type ScreenSize,
+} from './house';
 
 /** The charge of the demo that waits in the queue. */
 const queued = 'R-2418';
@@ -16,7 +27,7 @@ describeInBrowser.each<{ size: ScreenSize }>([{ size: 'phone' }, { size: 'wide' 
     let house: House;
     let foreman: Visitor;
     beforeAll(async () => {
-      house = await openHouse();
+      house = await openHouse({ clockAheadMs: untilMorning() });
       // A channel that is taken answers 409.
       foreman = await member(house, 'foreman', '/bench-plan', { size, expected: [/status of 409/] });
       await clearLane();

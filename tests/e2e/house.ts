@@ -2,9 +2,11 @@
 import fs from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
+import { DateTime } from 'luxon';
 import type { Browser, BrowserContextOptions, Locator, Page } from 'playwright-core';
 import { afterEach, expect } from 'vitest';
 import { fromRoot } from '@/server/cli/tools.mjs';
+import { demoZone } from '@/server/demo/hours';
 import type { Role } from '@/shared/contract/roles';
 import { openBrowser, seriousFindings, shot, viewports, visit, type Visitor } from '../support/browser';
 import { signInAs } from '../support/demo';
@@ -21,6 +23,8 @@ export const slowTest = 420_000;
 export interface House {
   server: Launched;
   browser: Browser;
+  /** How far server and pages are ahead of the machine's clock, ms. */
+  clockAheadMs: number;
   close: () => Promise<void>;
 }
 
@@ -31,15 +35,16 @@ const demoKeepsMs = 6 * 60_000;
  * A data folder with a fresh demo. Making one is most of a start, and each file has its own server: it is made once
  * and copied for the others.
  */
-async function demoData(): Promise<string> {
+async function demoData(clockAheadMs: number): Promise<string> {
   // A folder of one's own with a demo in it, while tests are being written.
   if (process.env.BIDEWELL_E2E_DEMO) return copied(process.env.BIDEWELL_E2E_DEMO);
-  const made = fromRoot('node_modules/.cache/bidewell-e2e-demo');
+  const day = clockAheadMs === 0 ? '' : `-${new Date(Date.now() + clockAheadMs).toISOString().slice(0, 10)}`;
+  const made = fromRoot(`node_modules/.cache/bidewell-e2e-demo${day}`);
   const age = fs.existsSync(made) ? Date.now() - fs.statSync(made).mtimeMs : Infinity;
   const built = fs.statSync(fromRoot('dist-server/main.js')).mtimeMs;
   if (age > demoKeepsMs || Date.now() - age < built) {
     const fresh = fs.mkdtempSync(`${made}-`);
-    const server = await launch({ dataDir: fresh });
+    const server = await launch({ dataDir: fresh, clockAheadMs });
     await server.stop();
     fs.rmSync(made, { recursive: true, force: true });
     fs.renameSync(fresh, made);
@@ -54,15 +59,27 @@ function copied(folder: string): string {
   return copy;
 }
 
+/**
+ * How far the next working morning of the demo is ahead, ms: half past eight of a weekday. What a plan can do depends on
+ * who is still there to look in, so that what is tested of it must not hang on the hour of the test.
+ */
+export function untilMorning(): number {
+  const now = DateTime.now().setZone(demoZone());
+  let morning = now.set({ hour: 8, minute: 30, second: 0, millisecond: 0 });
+  while (morning <= now || morning.weekday > 5) morning = morning.plus({ days: 1 });
+  return morning.diff(now).toMillis();
+}
+
 /** A server of its own with the browser that looks at it. */
-export async function openHouse({ demo = true, ...options }: LaunchOptions = {}): Promise<House> {
-  const dataDir = demo ? await demoData() : undefined;
-  const server = await launch({ ...options, demo, dataDir });
+export async function openHouse({ demo = true, clockAheadMs = 0, ...options }: LaunchOptions = {}): Promise<House> {
+  const dataDir = demo ? await demoData(clockAheadMs) : undefined;
+  const server = await launch({ ...options, demo, dataDir, clockAheadMs });
   try {
     const browser = await openBrowser();
     const house: House = {
       server,
       browser,
+      clockAheadMs,
       close: async () => {
         await browser.close();
         // The one that runs now: a test may have ended the first and started another over its data.
@@ -97,9 +114,10 @@ export interface DoorOptions {
 }
 
 /** Somebody who has not signed in. */
-export async function stranger({ server, browser }: House, options: DoorOptions = {}): Promise<Visitor> {
+export async function stranger(house: House, options: DoorOptions = {}): Promise<Visitor> {
+  const { server, browser, clockAheadMs } = house;
   const { size = 'phone', expected, context } = options;
-  const visitor = await visit(browser, server.url, { viewport: viewports[size], expected, context });
+  const visitor = await visit(browser, server.url, { viewport: viewports[size], expected, context, clockAheadMs });
   visitor.page.setDefaultTimeout(patience.timeout);
   visitor.context.setDefaultTimeout(patience.timeout);
   inside.add(visitor);

@@ -17,6 +17,7 @@ import {
   patience,
   sentenceAt,
   slowTest,
+  untilMorning,
   words,
   type House,
 } from './house';
@@ -24,7 +25,7 @@ import {
 describeInBrowser('other work', () => {
   let house: House;
   beforeAll(async () => {
-    house = await openHouse();
+    house = await openHouse({ clockAheadMs: untilMorning() });
   });
   afterAll(() => house?.close());
 
@@ -76,6 +77,8 @@ describeInBrowser('other work', () => {
       await button(page, 'Done: Check the torque wrench').waitFor();
       await judge(visitor, 'other-work-begun');
       await button(page, 'Done: Check the torque wrench').click();
+      // Its words come when they are asked for.
+      await button(page.getByRole('dialog'), 'All of it is done').waitFor();
       await judge(visitor, 'other-work-done-sheet');
       await button(page.getByRole('dialog'), 'All of it is done').click();
       await button(page, 'Done: Check the torque wrench').waitFor({ state: 'detached' });

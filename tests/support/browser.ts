@@ -48,11 +48,28 @@ export interface VisitOptions {
   /** Console errors that the test itself provokes, such as the browser's own line about a 404. */
   expected?: RegExp[];
   context?: BrowserContextOptions;
+  /** How far the clock of this person's pages goes ahead of the machine's, ms. */
+  clockAheadMs?: number;
+}
+
+/** Runs in each page before its own code. */
+function setClock(aheadMs: number): void {
+  const RealDate = Date;
+  class SetDate extends RealDate {
+    constructor(...parts: unknown[]) {
+      if (parts.length === 0) super(SetDate.now());
+      else super(...(parts as [number]));
+    }
+    static override now(): number {
+      return RealDate.now() + aheadMs;
+    }
+  }
+  globalThis.Date = SetDate as DateConstructor;
 }
 
 /** A person with a browser of their own (cookies apart from every other visitor). */
 export async function visit(browser: Browser, url: string, options: VisitOptions = {}): Promise<Visitor> {
-  const { viewport = viewports.phone, expected = [], context: more = {} } = options;
+  const { viewport = viewports.phone, expected = [], context: more = {}, clockAheadMs = 0 } = options;
   const narrow = viewport.width < 600;
   const context = await browser.newContext({
     baseURL: url,
@@ -63,6 +80,7 @@ export async function visit(browser: Browser, url: string, options: VisitOptions
     reducedMotion: 'reduce',
     ...more,
   });
+  if (clockAheadMs !== 0) await context.addInitScript(setClock, clockAheadMs);
   const page = await context.newPage();
   const problems: string[] = [];
   const note = (text: string) => {

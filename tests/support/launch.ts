@@ -14,6 +14,8 @@ export interface LaunchOptions {
   dataDir?: string;
   /** The port of a server that ran before; without it a free one. */
   port?: number;
+  /** How far the server's clock goes ahead of the machine's, ms. */
+  clockAheadMs?: number;
 }
 
 export interface Launched {
@@ -63,13 +65,15 @@ async function untilReady(url: string, child: ChildProcess, output: () => string
  * Starts the built server (dist-server/main.js, web app from dist/) on a free port of 127.0.0.1.
  * @throws Error when it was not built or does not get ready.
  */
-export async function launch({ demo = true, env = {}, dataDir, port: wished }: LaunchOptions = {}): Promise<Launched> {
+export async function launch(options: LaunchOptions = {}): Promise<Launched> {
+  const { demo = true, env = {}, dataDir, port: wished, clockAheadMs = 0 } = options;
   const main = fromRoot('dist-server/main.js');
   if (!fs.existsSync(main))
     throw new Error('The server is not built. Run `npm run build` first; `npm test` does it by itself.');
   const folder = dataDir ?? fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-test-'));
   const port = wished ?? (await freePort());
-  const child = spawn(process.execPath, ['--enable-source-maps', main], {
+  const clock = clockAheadMs === 0 ? [] : ['--import', fromRoot('tests/support/set-clock.mjs')];
+  const child = spawn(process.execPath, ['--enable-source-maps', ...clock, main], {
     cwd: fromRoot('.'),
     stdio: ['ignore', 'pipe', 'pipe'],
     env: {
@@ -81,6 +85,7 @@ export async function launch({ demo = true, env = {}, dataDir, port: wished }: L
       BIDEWELL_DEMO: demo ? 'on' : 'off',
       BIDEWELL_LOG: 'info',
       BIDEWELL_BACKUP_HOURS: '0',
+      CLOCK_AHEAD_MS: String(clockAheadMs),
       ...env,
     },
   });

@@ -1,6 +1,6 @@
 /** The look-ins of all charges: who came, and who is to come. */
 import { assignLookIns } from '@/calc/index';
-import type { PlanLookInDto } from '@/shared/contract/bench-plan';
+import type { NobodyDto, PlanLookInDto } from '@/shared/contract/bench-plan';
 import type { ChargeFile } from '../charge-file';
 import { lookInTimes } from '../charge-look-ins';
 import { waitShiftMs } from '../charge-segments';
@@ -9,7 +9,8 @@ import { listText, titleOf } from '../charge-words';
 import { toInstant, toOptionalInstant } from '../instants';
 import { isRunning } from '../charge-stages';
 import { hasTime, ownerOf, type BenchGround } from './ground';
-import { endsOf, type HandBlock } from './hands';
+import { binds, endsOf, type HandBlock } from './hands';
+import { nobodyWords } from './nobody-words';
 import type { Stretch } from './spans';
 
 export interface GivenLookIn {
@@ -17,6 +18,8 @@ export interface GivenLookIn {
   dueAt: number;
   doneAt: number | null;
   personId: string | null;
+  /** Why nobody can; null: somebody can, or it has been done. */
+  nobody: NobodyDto | null;
 }
 
 /** What a look-in takes where the workshop has not said, min. A guess of the trade. */
@@ -24,12 +27,9 @@ const VISIT_MINUTES = 5;
 export const lookInMs = ({ workshop }: Pick<BenchGround, 'workshop'>): number =>
   (workshop.lookInVisitMinutes ?? VISIT_MINUTES) * 60_000;
 
-/** Hands in something that cannot be left; a fit and other work can be. */
-const binds = ({ kind }: HandBlock): boolean => kind !== 'fit';
-
 /**
  * Look-ins of the charges, done and to come. Each of those to come goes to the charge's own person where they are there
- * and have their hands free, else to somebody who is; to nobody where nobody is there.
+ * and have their hands free, else to somebody who is; to nobody, with the reason, where nobody can.
  * @param handsOf the laid out hands of each person, by id
  */
 export function givenLookIns(ground: BenchGround, hands: ReadonlyMap<string, readonly HandBlock[]>): GivenLookIn[] {
@@ -37,7 +37,7 @@ export function givenLookIns(ground: BenchGround, hands: ReadonlyMap<string, rea
   const done = files.flatMap((file) =>
     file.lookIns
       .filter(({ doneAt }) => doneAt !== null)
-      .map(({ dueAt, doneAt, personId }): GivenLookIn => ({ file, dueAt, doneAt, personId })),
+      .map(({ dueAt, doneAt, personId }): GivenLookIn => ({ file, dueAt, doneAt, personId, nobody: null })),
   );
   const wanted = files
     .filter((file) => hasTime(file, now))
@@ -56,12 +56,13 @@ export function givenLookIns(ground: BenchGround, hands: ReadonlyMap<string, rea
     })),
     lookInMs(ground) / 1000,
   );
-  const personOf = new Map(given.map(({ lookInId, personId }) => [lookInId, personId]));
-  const coming = wanted.map((one, index): GivenLookIn => ({
-    ...one,
-    doneAt: null,
-    personId: personOf.get(String(index)) ?? null,
-  }));
+  const coming = wanted.map((one, index): GivenLookIn => {
+    const { personId, nobody: kind } = given[index]!;
+    const from = Math.max(now, one.dueAt);
+    const visit = { from, to: from + lookInMs(ground) };
+    const nobody = kind === null ? null : { kind, because: nobodyWords(ground, hands, kind, visit) };
+    return { ...one, doneAt: null, personId, nobody };
+  });
   return [...done, ...coming].sort((a, b) => a.dueAt - b.dueAt);
 }
 
@@ -85,7 +86,7 @@ function wantedOf(file: ChargeFile, now: number): number[] {
 }
 
 export const lookInDto = ({ people }: BenchGround, given: GivenLookIn): PlanLookInDto => {
-  const { file, dueAt, doneAt, personId } = given;
+  const { file, dueAt, doneAt, personId, nobody } = given;
   const { charge } = file;
   const name =
     personId === null ? null : (people.find(({ id }) => id === personId)?.name ?? file.people.get(personId)?.name);
@@ -96,5 +97,6 @@ export const lookInDto = ({ people }: BenchGround, given: GivenLookIn): PlanLook
     dueAt: toInstant(dueAt),
     doneAt: toOptionalInstant(doneAt),
     person: personId === null ? null : { id: personId, name: name ?? 'somebody' },
+    nobody,
   };
 };

@@ -8,7 +8,7 @@ import { paperWords, type PaperWords } from '../../papers/paper-words';
 import { chargeCard } from '../charge-dto';
 import type { ChargeFile } from '../charge-file';
 import { isOpen, isWaitingToStart } from '../charge-stages';
-import { titleOf } from '../charge-words';
+import { clockText, titleOf } from '../charge-words';
 import { may } from '../may';
 import { groundFor } from './bench-plan.service';
 import type { GivenLookIn } from './charge-look-ins';
@@ -162,8 +162,14 @@ function cautionsOf(ground: BenchGround, all: Lines, own: string | null): string
     if (!isOpen(charge.stage) || (own !== null && !isShownTo(ground, all, file, own))) continue;
     if (!heldSpans(file, ground.now).some((one) => overlaps(one, ground.days))) continue;
     for (const { text } of charge.option.cautions) add(text, titleOf(charge));
-    const alone = all.lookIns.filter((one) => one.file === file && one.doneAt === null && one.personId === null);
-    if (alone.length > 0) add('Nobody is there for some of its look-ins.', titleOf(charge));
+    // Each reason once, with the first look-in it is of.
+    const told = new Set<string>();
+    for (const one of all.lookIns) {
+      if (one.file !== file || one.nobody === null || told.has(one.nobody.because)) continue;
+      told.add(one.nobody.because);
+      const at = clockText(Math.max(one.dueAt, ground.now), ground.workshop.zone, ground.days.from);
+      add(`Nobody can look in at ${at}. ${one.nobody.because}`, titleOf(charge));
+    }
   }
   return [...texts].map(([text, titles]) => `${[...new Set(titles)].join(', ')}: ${text}`);
 }

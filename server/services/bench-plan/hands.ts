@@ -18,6 +18,9 @@ export interface HandBlock extends Stretch {
   over: boolean;
 }
 
+/** Hands in something that cannot be left; a fit and other work can be. */
+export const binds = ({ kind }: HandBlock): boolean => kind !== 'fit';
+
 const words: Record<HandBlock['kind'], string> = {
   'clip-on': 'Clip on',
   swap: 'Swap',

@@ -7,19 +7,25 @@ import { Button } from '@/shared/ui/primitives/button';
 import { Num } from '@/shared/ui/primitives/num';
 import { Rule } from '@/shared/ui/primitives/rule';
 import { Txt } from '@/shared/ui/primitives/txt';
-import {
-  leverAsk,
-  leverKeys,
-  leverNames,
-  noLevers,
-  type LeverKey,
-  type LeverTyped,
-} from '@/shared/ui/waits/lever-form';
+import { leverAsk, leverKeys, leverNames, type LeverKey, type LeverTyped } from '@/shared/ui/waits/lever-form';
+import { addressOfLevers, leversOfAddress } from '@/shared/ui/waits/lever-address';
 import { LeverRow, ReplayLine } from '@/shared/ui/waits/lever-row';
 import { leftOutWords, lostWithInterval, tooFewWords } from '@/shared/ui/waits/replay-words';
 import { LeverFields } from './lever-fields';
 import { ReplayState } from './replay-state';
 import type { WaitAddressHeld } from './use-wait-address';
+
+/** What is ticked and typed: kept here while it is typed, and in the address, so that a reload or a sent link has it. */
+function useLevers({ params, set }: WaitAddressHeld) {
+  const [typed, setTyped] = useState<LeverTyped>(() => leversOfAddress(params));
+  return [
+    typed,
+    (next: LeverTyped) => {
+      setTyped(next);
+      set(addressOfLevers(next));
+    },
+  ] as const;
+}
 
 const same = (one: Levers, other: Levers) => JSON.stringify(one) === JSON.stringify(other);
 
@@ -28,7 +34,7 @@ export function ShortenPart({ address }: { address: WaitAddressHeld }) {
   const { from, to } = address.query;
   const replay = useReplay('what-if');
   const down = useLink().state === 'down';
-  const [typed, setTyped] = useState<LeverTyped>(noLevers);
+  const [typed, setTyped] = useLevers(address);
   const [tried, setTried] = useState(false);
   // An answer belongs to the days it was asked for.
   const [askedFor, setAskedFor] = useState('');

@@ -149,9 +149,11 @@ function LaneRow({
       x: toX(axis, from),
       title: charge.card.title,
       tag: tags[index]?.text ?? null,
+      needed: tags[index] !== null && tags[index]?.tone !== 'plain',
     })),
     pegs.flat().map(({ s }) => pegX(s)),
     axis.width,
+    pegs.flatMap((list) => list.filter(({ state }) => state === 'done').map(({ s }) => pegX(s))),
   );
   return (
     <View style={[styles.row, { top, width: axis.width }]}>

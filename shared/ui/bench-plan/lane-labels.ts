@@ -13,6 +13,8 @@ export interface LabelInput {
   title: string;
   /** 'check due', '22 min over'; null: none. */
   tag: string | null;
+  /** The tag says that somebody is needed: look-ins that are done give way to it. */
+  needed?: boolean;
 }
 export interface PlacedLabel {
   x: number;
@@ -30,15 +32,17 @@ const farthest = { before: 24, after: 80 } as const;
 
 /**
  * Places the labels of one row from left to right: each at its silhouette, else as near beside the look-in that is in its
- * way; without its tag where both do not fit; and clear of the labels beside it. Look-ins that still lie under a title are
- * named in `hidden`, to be left out.
+ * way; without its tag where both do not fit; and clear of the labels beside it. Look-ins that still lie under a title, and
+ * those done that lie under a tag that is needed, are named in `hidden`, to be left out.
  *
  * @param pegs places of the look-ins' heads, px
+ * @param done those of them whose look-in is done
  */
 export function placeLabels(
   row: readonly LabelInput[],
   pegs: readonly number[],
   width: number,
+  done: readonly number[] = [],
 ): { labels: PlacedLabel[]; hidden: number[] } {
   const hidden: number[] = [];
   const leftOf = ({ x, title }: LabelInput) => Math.max(0, Math.min(x, width - labelWidth(title, null)));
@@ -47,21 +51,24 @@ export function placeLabels(
     const left = leftOf(label);
     const next = row[index + 1];
     const limit = next ? leftOf(next) - wordGap : width;
-    const free = (x: number, wide: number) =>
-      x >= Math.max(0, lastEnd + wordGap, left - farthest.before) &&
-      x <= left + farthest.after &&
-      x + wide <= limit &&
-      pegs.every((peg) => peg + pegRoom <= x || peg - pegRoom >= x + wide);
+    const under = (peg: number, x: number, wide: number) => peg + pegRoom > x && peg - pegRoom < x + wide;
+    const apart = (x: number, wide: number) =>
+      x >= Math.max(0, lastEnd + wordGap, left - farthest.before) && x <= left + farthest.after && x + wide <= limit;
+    const free = (x: number, wide: number, inTheWay = pegs) =>
+      apart(x, wide) && !inTheWay.some((peg) => under(peg, x, wide));
     for (const tag of label.tag === null ? [null] : [label.tag, null]) {
       const wide = labelWidth(label.title, tag);
       const starts = [left, ...pegs.flatMap((peg) => [peg + pegRoom, peg - pegRoom - wide])];
       const [x] = starts.filter((start) => free(start, wide)).sort((a, b) => Math.abs(a - left) - Math.abs(b - left));
-      if (x === undefined) continue;
-      lastEnd = x + wide;
-      return { x, title: label.title, tag, width: wide };
+      const open = pegs.filter((peg) => !done.includes(peg));
+      const over = x === undefined && label.needed && tag !== null && free(left, wide, open) ? left : x;
+      if (over === undefined) continue;
+      hidden.push(...pegs.filter((peg) => under(peg, over, wide)));
+      lastEnd = over + wide;
+      return { x: over, title: label.title, tag, width: wide };
     }
     const wide = labelWidth(label.title, null);
-    hidden.push(...pegs.filter((peg) => peg + pegRoom > left && peg - pegRoom < left + wide));
+    hidden.push(...pegs.filter((peg) => under(peg, left, wide)));
     lastEnd = left + wide;
     return { x: left, title: label.title, tag: null, width: wide };
   });

@@ -100,26 +100,50 @@ export function NobodyCallOut({
   );
 }
 
-/** The look-ins still to come for which nobody is there, the soonest first. */
+/** The look-ins still to come that nobody can do, the soonest first. */
 export const lookInsOfNobody = ({ charges }: Pick<BenchPlanDto, 'charges'>, now: number): PlanLookInDto[] =>
   charges
     .flatMap(({ lookIns }) => lookIns)
     .filter(({ person, doneAt, dueAt }) => person === null && doneAt === null && Date.parse(dueAt) >= now)
     .sort((a, b) => Date.parse(a.dueAt) - Date.parse(b.dueAt));
 
-/** Look-ins that fall into a time in which nobody is there. */
+/** The first look-in for each reason, and how many more have the same. */
+function byReason(lookIns: readonly PlanLookInDto[]): { first: PlanLookInDto; more: number }[] {
+  const reasons = new Map<string, { first: PlanLookInDto; more: number }>();
+  for (const one of lookIns) {
+    const known = reasons.get(one.nobody?.because ?? '');
+    if (known) known.more += 1;
+    else reasons.set(one.nobody?.because ?? '', { first: one, more: 0 });
+  }
+  return [...reasons.values()];
+}
+
+/** So many reasons are told; what is left is counted. */
+const MOST_REASONS = 3;
+
+/** Look-ins that nobody can do, each with why: nobody is there, or whoever is has their hands in something. */
 export function LookInsCallOut({ lookIns, now }: { lookIns: readonly PlanLookInDto[]; now: number }) {
   const styles = useStyles();
   const { zone, marks } = useFormats();
-  const [first, ...more] = lookIns;
-  if (!first) return null;
-  const rest = more.length === 0 ? '' : ` ${more.length} more after it.`;
+  if (lookIns.length === 0) return null;
+  const reasons = byReason(lookIns);
+  const untold = reasons.slice(MOST_REASONS).reduce((sum, { more }) => sum + 1 + more, 0);
+  const words = lookIns.some(({ nobody }) => nobody?.kind !== 'busy')
+    ? 'Nobody is there to look in'
+    : 'Nobody is free to look in';
   return (
-    <CallOut tone="amber" label="Nobody is there to look in">
-      <StageTag stage="check-due" text="Nobody is there to look in" />
-      <Txt style={styles.fact}>
-        {`${first.title} on ${first.channelName} asks for a look-in at ${moment(Date.parse(first.dueAt), zone, now, marks)}.${rest}`}
-      </Txt>
+    <CallOut tone="amber" label={words}>
+      <StageTag stage="check-due" text={words} />
+      {reasons.slice(0, MOST_REASONS).map(({ first, more }) => (
+        <Txt key={`${first.chargeId}-${first.dueAt}`} style={styles.fact}>
+          {[
+            `${first.title} on ${first.channelName} asks for a look-in at ${moment(Date.parse(first.dueAt), zone, now, marks)}.`,
+            ...(first.nobody ? [first.nobody.because] : []),
+            ...(more > 0 ? [`So it is with ${more} more after it.`] : []),
+          ].join(' ')}
+        </Txt>
+      ))}
+      {untold > 0 ? <Txt tone="ink2">{`${untold} more after them.`}</Txt> : null}
     </CallOut>
   );
 }

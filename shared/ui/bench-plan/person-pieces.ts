@@ -7,9 +7,11 @@ import type { LookIn } from '../wait-ribbon/layout';
 import type { Wording } from './charge-words';
 import { toX, type PlanAxis } from './plan-axis';
 
-/** px from which a free stretch says 'free' behind its minutes, and from which it says the minutes. */
-const freeWordRoom = 100;
-const freeMinutesRoom = 48;
+/** px of a letter of a dock's title; a little more than the face takes. */
+const letter = 6.8;
+/** What a dock keeps free beside its title, px: less in a narrow one, nothing in a break. */
+const airOf = (room: number, kind: Dock['kind']): number =>
+  kind === 'break' ? 0 : kind === 'free' || room < 64 ? 9 : 17;
 /** Narrower than this a free stretch is no target of its own: it is in the list beside. */
 const targetRoom = 48;
 
@@ -37,6 +39,16 @@ export const freeWords = (free: FreeStretchDto, wording: Wording): string =>
     ...(free.waitOf ? [`while ${free.waitOf.title} is awaited`] : []),
   ].join(', ');
 
+/** The first of the titles that has room whole; else the last of them, which may be cut short. */
+function titleIn(room: number, kind: Dock['kind'], titles: readonly string[]): string {
+  const fits = (title: string) => title.length * letter <= room - airOf(room, kind);
+  return titles.find(fits) ?? titles.at(-1) ?? '';
+}
+
+/** What a block is called where its room is short: 'Fit R-2411' is 'R-2411'. A fill keeps its own words. */
+const titlesOf = ({ kind, title }: PlanBlockDto): string[] =>
+  kind === 'fill' ? [title] : [title, title.split(' ').at(-1) ?? '', ''];
+
 /**
  * The docks of a person on the axis, in the order of their begin. Seconds count from the axis's left end.
  *
@@ -50,13 +62,15 @@ export function personDocks(
   onFree?: () => void,
 ): Dock[] {
   const s = (instant: string) => (Date.parse(instant) - axis.from) / 1000;
+  const roomOf = (one: { from: string; to: string }) =>
+    Math.min(axis.width, toX(axis, Date.parse(one.to))) - Math.max(0, toX(axis, Date.parse(one.from)));
   const docks: Dock[] = [
     ...person.blocks.map((block, index): Dock => ({
       key: `b${index}`,
       fromS: s(block.from),
       toS: s(block.to),
       kind: block.kind === 'fill' ? 'fill' : 'own',
-      title: block.title,
+      title: titleIn(roomOf(block), block.kind === 'fill' ? 'fill' : 'own', titlesOf(block)),
       label: blockWords(block, wording),
     })),
     ...person.breaks.map((pause, index): Dock => ({
@@ -64,23 +78,18 @@ export function personDocks(
       fromS: s(pause.from),
       toS: s(pause.to),
       kind: 'break',
-      title: 'Break',
+      title: titleIn(roomOf(pause), 'break', ['Break', '']),
       label: `Break, ${span(pause.from, pause.to, wording)}`,
     })),
     ...person.free.map((free, index): Dock => {
-      const room = Math.min(axis.width, toX(axis, Date.parse(free.to))) - Math.max(0, toX(axis, Date.parse(free.from)));
+      const room = roomOf(free);
       const ahead = Date.parse(free.to) > now;
       return {
         key: `f${index}`,
         fromS: s(free.from),
         toS: s(free.to),
         kind: 'free',
-        title:
-          room >= freeWordRoom
-            ? `${free.minutes}${NBSP}min free`
-            : room >= freeMinutesRoom
-              ? `${free.minutes}${NBSP}min`
-              : '',
+        title: titleIn(room, 'free', [`${free.minutes}${NBSP}min free`, `${free.minutes}${NBSP}min`, '']),
         label: freeWords(free, wording),
         onPress: ahead && room >= targetRoom ? onFree : undefined,
       };

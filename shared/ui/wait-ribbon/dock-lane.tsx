@@ -110,5 +110,11 @@ const useStyles = makeStyles(({ colors }) => ({
   },
   own: { backgroundColor: colors.well },
   // A line of now behind it would go through its word.
-  break: { alignItems: 'center', backgroundColor: colors.ground },
+  break: {
+    alignItems: 'center',
+    paddingLeft: 0,
+    paddingRight: 0,
+    paddingHorizontal: 0,
+    backgroundColor: colors.ground,
+  },
 }));

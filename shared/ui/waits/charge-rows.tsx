@@ -30,9 +30,9 @@ export function ChargeRows({
       columns={[
         { key: 'title', title: 'Charge', phone: 'name', cell: (row) => row.title },
         { key: 'type', title: 'Module type', phone: 'detail', share: 1.5, cell: (row) => row.typeName },
-        { key: 'channel', title: 'Channel', phone: 'detail', share: 0.7, cell: (row) => row.channelName },
+        { key: 'channel', title: 'Channel', phone: 'detail', share: 0.9, cell: (row) => row.channelName },
         { key: 'who', title: 'Technician', phone: 'none', cell: (row) => row.technicianName.split(' ')[0] ?? '' },
-        { key: 'way', title: 'Way', phone: 'none', share: 1.5, cell: (row) => wayNames[row.way] },
+        { key: 'way', title: 'Way', phone: 'none', share: 1.4, cell: (row) => wayNames[row.way] },
         {
           key: 'ready',
           title: 'Ready',

@@ -6,6 +6,7 @@ import { dimensionNames, stageNames, wayNames, weekdayNames } from './wait-words
 export const addressKeys = [
   ...(['weeks', 'from', 'to', 'type', 'charger', 'channel', 'technician', 'way', 'weekday', 'stage'] as const),
   ...(['by', 'show', 'compare', 'cfrom', 'cto', 'week'] as const),
+  ...(['levers', 'shelftype', 'shelfvolts', 'ampslike', 'amps', 'morelike', 'lookin'] as const),
 ] as const;
 export type AddressKey = (typeof addressKeys)[number];
 export type WaitParams = Partial<Record<AddressKey, string>>;

@@ -45,6 +45,7 @@ function person(
       dueAt: iso(clock),
       doneAt: at(clock) < now ? iso(clock) : null,
       person: { id, name },
+      nobody: null,
     })),
   };
 }

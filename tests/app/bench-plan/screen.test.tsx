@@ -123,6 +123,34 @@ describe('the side column', () => {
     await waitFor(() => expect(writes('/api/bench-plan/undo/change-1')).toHaveLength(1));
   });
 
+  describe('names the look-ins that nobody can do', () => {
+    const look = (clock: string, kind: 'away' | 'busy', because: string) => ({
+      ...{ chargeId: 'R-2411', title: 'R-2411', channelName: 'A2', dueAt: iso(clock), doneAt: null, person: null },
+      nobody: { kind, because },
+    });
+    const busy = look('14:50', 'busy', 'Ines clips on R-2418 until 14:57. Nobody else is there.');
+    const openWith = (lookIns: (typeof busy)[]) =>
+      open('foreman', 1440, {
+        ...plan,
+        charges: plan.charges.map((one) => (one.card.title === 'R-2411' ? { ...one, lookIns } : one)),
+      });
+
+    it('with the reason of each, those of one reason together', async () => {
+      const closed = ['18:50', '19:50', '20:50'].map((clock) => look(clock, 'away', 'The workshop is closed then.'));
+      openWith([...closed, busy]);
+      const words = (await part('Nobody is there to look in')).getAllByText(/asks for a look-in/);
+      expect(words.map(({ textContent }) => textContent.replaceAll('\u00a0', ' '))).toEqual([
+        'R-2411 on A2 asks for a look-in at 14:50. Ines clips on R-2418 until 14:57. Nobody else is there.',
+        'R-2411 on A2 asks for a look-in at 18:50. The workshop is closed then. So it is with 2 more after it.',
+      ]);
+    });
+
+    it('as nobody’s who is free where whoever is there has their hands full', async () => {
+      openWith([busy]);
+      expect((await part('Nobody is free to look in')).getByText(/Ines clips on R-2418 until 14:57/)).toBeTruthy();
+    });
+  });
+
   it('names an alarm that nobody has, who is free, and gives it to them', async () => {
     open();
     server.answers['GET /api/alerts'] = () =>

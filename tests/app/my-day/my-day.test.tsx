@@ -41,6 +41,7 @@ const hand = (kind: PlanBlockDto['kind'], title: string, from: string, to: strin
   to: iso(to),
 });
 const lookIn = (title: string, dueAt: string, doneAt: string | null = null): PlanLookInDto => ({
+  nobody: null,
   ...{ chargeId: title, title, channelName: 'A2', person: petra },
   dueAt: iso(dueAt),
   doneAt: doneAt === null ? null : iso(doneAt),

@@ -182,6 +182,17 @@ test('20 changes while all are connected are put on the walls without their read
   expect(read() - before).toBeLessThanOrEqual(WALLS);
 });
 
+test('a change of which nobody told is on the walls with the next one that is told', async () => {
+  const [untold, told] = await opened();
+  // Written by somebody whose announcement is lost: the revisions of the next one have a gap.
+  bench.server.deps.hub = { ...hub, toWorkshop: () => {} };
+  await act(await seen(bench, untold!), 'hold', { reason: 'The clip is warm' }).expect(200);
+  bench.server.deps.hub = hub;
+  await logReading(told!, 22).expect(200);
+  await expectAllToShowIt('after a gap');
+  expect(walls[0]!.board()!.charges.find(({ id }) => id === untold)?.stage).toBe('held');
+});
+
 test('a wall whose right is taken back among changes gets nothing more, whether it is connected or comes back', async () => {
   const [first] = await opened();
   const [revoked, away, ...others] = walls as [WallClient, WallClient, ...WallClient[]];

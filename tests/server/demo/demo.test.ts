@@ -7,6 +7,7 @@ import { passwordsFile, seedDemo } from '@/server/demo/seed';
 import { Charge } from '@/server/entities/charge';
 import { ChannelHold } from '@/server/entities/channel-hold';
 import { RestCheck } from '@/server/entities/rest-check';
+import { WorkStint } from '@/server/entities/work-stint';
 import { Workshop } from '@/server/entities/workshop';
 import type { AlertDto } from '@/shared/contract/alert';
 import type { BoardDto } from '@/shared/contract/board';
@@ -246,6 +247,21 @@ describe('the past of the demo', () => {
     expect(waits.medianS / 3600).toBeGreaterThan(1.5);
     expect(waits.medianS / 3600).toBeLessThan(5);
     expect(waits.stages.map(({ stage }) => stage)).toEqual(['queue', 'charging', 'tapering', 'resting', 'check-due']);
+  });
+
+  it('used 10 to 60 % of its waits by other work in each of eight weeks, nobody in two things at once', async () => {
+    const { weeks } = await read<WaitsDto>('/api/waits', 'foreman');
+    for (const { usedHours, lostHours } of weeks.slice(0, 8)) {
+      expect(usedHours / (usedHours + lostHours)).toBeGreaterThan(0.1);
+      expect(usedHours / (usedHours + lostHours)).toBeLessThan(0.6);
+    }
+    const stints = await server.deps.dataSource.manager.find(WorkStint, { order: { personId: 'ASC', fromAt: 'ASC' } });
+    const done = stints.filter(({ state }) => state === 'done');
+    expect(done.length).toBeGreaterThan(50);
+    done.forEach((stint, place) => {
+      const before = done[place - 1];
+      if (before?.personId === stint.personId) expect(stint.fromAt).toBeGreaterThanOrEqual(before.toAt);
+    });
   });
 
   it('never has two charges on one channel at once', async () => {

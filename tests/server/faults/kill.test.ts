@@ -45,7 +45,7 @@ const killAt = (service: typeof killAtMessageTo) => () => {
 };
 
 beforeAll(async () => {
-  await bundleServer(bundle, { 'set-clock': 'tests/server/faults/set-clock.ts' });
+  await bundleServer(bundle, { 'set-clock': 'tests/support/set-clock.mjs' });
   push = await startPushService(killAt('push'));
   phones = await startPhoneService(killAt('phones'));
   mail = await startMailCatcher(killAt('mail'));

@@ -1,6 +1,6 @@
 import { afterEach, beforeEach, expect, it } from 'vitest';
 import type { RepairSeasonDto } from '@/shared/contract/repair-season';
-import { did, makeBench, minute, type Bench } from '../charges/bench';
+import { answered, did, makeBench, minute, seen, type Bench } from '../charges/bench';
 import { arrival, chargedAndChecked, makeShop, type Shop } from './shop';
 
 let bench: Bench;
@@ -72,4 +72,33 @@ it('of a module that was put back on the shelf goes back to having no charge', a
   expect(unfitted).toMatchObject({ part: 'unfitted', from: checked.readyAt, chargeId: charge.id });
   expect(unplanned).toMatchObject({ part: 'unplanned', chargeId: null });
   expect(at(unplanned!.to) - at(unplanned!.from)).toBe(7 * minute);
+});
+
+it('parts a hold from the current on both sides of it, and one that lasts stays a hold past the end that was reckoned', async () => {
+  const page = await shop.take(await shop.confirm(await shop.read((await shop.book()).id, arrival)));
+  const { id } = await shop.plan(page, await bench.spare('S-0417'));
+  const { clock } = bench.server;
+  const started = await did(bench, await answered(bench, await seen(bench, id)), 'start');
+  await bench.live(12 * minute);
+  await did(bench, await seen(bench, id), 'hold', { reason: 'A clip is warm' });
+  const firstHeld = clock.now();
+  await bench.live(25 * minute);
+  await did(bench, await seen(bench, id), 'resume');
+  const resumed = clock.now();
+  await bench.live(8 * minute);
+  await did(bench, await seen(bench, id), 'hold', { reason: 'The bench is needed' });
+  const heldAgain = clock.now();
+  // Far beyond its rest, had it gone on.
+  await bench.live(600 * minute);
+  const found = await season(page.id);
+  const own = found.stretches.filter(({ chargeId }) => chargeId === id);
+  expect(own.map(({ part }) => part)).toEqual(['queue', 'charging', 'held', 'charging', 'held']);
+  expect(own.slice(1).map(({ from }) => at(from))).toEqual([
+    ...[at(started.startedAt!), firstHeld, resumed, heldAgain],
+  ]);
+  const seconds = Object.fromEntries(found.totals.map((one) => [one.part, one.seconds]));
+  expect(seconds.charging).toBeCloseTo(20 * 60, 1);
+  expect(seconds.held).toBeCloseTo(625 * 60, 1);
+  const all = found.totals.reduce((sum, one) => sum + one.seconds, 0);
+  expect(all).toBeCloseTo((at(found.to) - at(found.from)) / 1000, 3);
 });

@@ -4,6 +4,7 @@ import type { DataSource, Logger } from 'typeorm';
 import { makeDataSource } from '@/server/data-source';
 import { fillWaits } from '@/server/services/waits/fill-waits';
 import { recordWaits } from '@/server/services/waits/record-waits';
+import { findTopUpOf } from '@/server/repositories/charges.repository';
 import { workshopForPlans } from '@/server/repositories/workshop-for-plans.repository';
 import { makeTestServer, type TestServer } from '../../support/server';
 import { stock } from '../../support/stocked';
@@ -93,6 +94,13 @@ describe('the statements of the waits', () => {
     const plans = await plansOf(() => recordWaits(manager, workshop, [{ id: 'charge-1', readyAt: 1 }]));
     expect(plans.length).toBeGreaterThanOrEqual(5);
     expect(scans(plans)).toEqual([]);
+  });
+
+  it('of a charge find the one that went on from it by its own index, not among all of the workshop', async () => {
+    const plans = await plansOf(() => findTopUpOf(dataSource.manager, server.own.id, 'charge-1'));
+    expect(plans.map(({ steps }) => steps)).toEqual([
+      ['SEARCH Charge USING INDEX ix_charge_top_up (workshop_id=? AND top_up_of=?)'],
+    ]);
   });
 
   it('of a start at which nothing is missing only count over indexes', async () => {

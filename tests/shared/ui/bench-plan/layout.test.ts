@@ -163,6 +163,17 @@ describe('the labels of a lane', () => {
     expect([labels[0]!.x, hidden]).toEqual([100, [112]]);
   });
 
+  it('keep a tag that needs somebody where only look-ins that are done are in the way, which are left out', () => {
+    // As above: hours of 57 px leave no room for '3 min over' between the look-ins.
+    const late = { x: 100, title: 'R-2409', tag: '3 min over', needed: true };
+    const pegs = [160, 217, 274];
+    const kept = placeLabels([late], pegs, 600, [160, 217]);
+    expect([kept.labels[0]!.x, kept.labels[0]!.tag, kept.hidden]).toEqual([100, '3 min over', [160, 217]]);
+    // One that is still to come stays, and so does what is plain.
+    expect(placeLabels([late], pegs, 600, [217]).labels[0]!.tag).toBeNull();
+    expect(placeLabels([{ ...late, needed: false }], pegs, 600, pegs).labels[0]!.tag).toBeNull();
+  });
+
   it('of 300 random lanes never stand over each other, over a look-in that is drawn, or beyond the lane', () => {
     let seed = 11;
     const random = (below: number) => {
@@ -201,6 +212,16 @@ describe('the lane of a person', () => {
       ['fill', 'Door lock R-2419'],
       ['free', '134\u00a0min free'],
     ]);
+  });
+
+  it('names a piece of own work by its repair alone where its words have no room, and a short break not at all', () => {
+    const titles = (width: number, kind: string) =>
+      personDocks(people[0]!, { ...axis, width }, now, wording)
+        .filter((dock) => dock.kind === kind)
+        .map(({ title }) => title);
+    expect(titles(872, 'own')).toEqual(['Read R-2418', 'Fit R-2404', '', 'Fit R-2411']);
+    expect(titles(600, 'own')).toEqual(['Read R-2418', 'R-2404', '', 'Fit R-2411']);
+    expect([titles(872, 'break'), titles(400, 'break')]).toEqual([['Break'], ['']]);
   });
 
   it('says the minutes of a short free stretch alone, and nothing where even those have no room', () => {

@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { addressOfLevers, leversOfAddress } from '@/shared/ui/waits/lever-address';
+import { leverKeys, noLevers } from '@/shared/ui/waits/lever-form';
 import { addressOf, mondayOf, readAddress } from '@/shared/ui/waits/wait-address';
 import { againstPlan, usedShare } from '@/shared/ui/waits/wait-words';
 import { weekBars } from '@/shared/ui/waits/week-bars';
@@ -113,5 +115,26 @@ describe('the bars of weeks', () => {
     expect(labels.at(-1)).toBe('53');
     const numbered = labels.flatMap((label, at) => (label === '' ? [] : [at]));
     numbered.slice(1).forEach((at, i) => expect((at - numbered[i]!) * (320 / 52)).toBeGreaterThanOrEqual(26));
+  });
+});
+
+describe('the levers in the address', () => {
+  const throughAddress = (params: Parameters<typeof addressOf>[1]) =>
+    Object.fromEntries(new URLSearchParams(addressOf('/waits', params).split('?')[1]));
+
+  it('come back from a link as they were ticked and typed: all seven, half a number and another tongue’s comma too', () => {
+    const typed = {
+      ...{ ticked: [...leverKeys], shelfTypeId: 't-1', shelfVolts: '3,88', ampsChannelId: 'a1', amps: '20.' },
+      ...{ moreChannelId: 'c2', lookInMinutes: '90' },
+    };
+    expect(leversOfAddress(throughAddress({ weeks: '4', ...addressOfLevers(typed) }))).toEqual(typed);
+  });
+
+  it('leave nothing in it where none is ticked or typed, and are none where they are not understood', () => {
+    expect(addressOf('/waits', addressOfLevers(noLevers))).toBe('/waits');
+    expect(leversOfAddress({ levers: 'toString.startAtBooking.everything' })).toEqual({
+      ...noLevers,
+      ticked: ['startAtBooking'],
+    });
   });
 });
