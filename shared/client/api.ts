@@ -136,7 +136,8 @@ export function makeApi(env: ApiEnvironment) {
     get: <T>(path: string, options?: CallOptions) => call<T>('GET', path, options),
     post: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('POST', path, { ...options, body }),
     /** A file, as a form or alone. */
-    upload: <T>(path: string, form: FormData | Blob, options?: CallOptions) => call<T>('POST', path, { ...options, form }),
+    upload: <T>(path: string, form: FormData | Blob, options?: CallOptions) =>
+      call<T>('POST', path, { ...options, form }),
     patch: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PATCH', path, { ...options, body }),
     put: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PUT', path, { ...options, body }),
     delete: <T = void>(path: string, options?: CallOptions) => call<T>('DELETE', path, options),

@@ -2,6 +2,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
 import type { LogChoices, LogPreviewDto, LogTakenDto } from '@/shared/contract/charge-log';
 import { api } from './api';
+import { isProblem } from './api-problem';
 import { storeCharge } from './charges';
 import { roots } from './query-keys';
 
@@ -21,6 +22,21 @@ const send = <T>(
     query: { name: name.slice(0, 200), choices: choices === null ? null : JSON.stringify(choices) },
     ...more,
   });
+
+/** A server may still be at the file that was broken off a moment ago: it takes one of a person at a time. */
+const TRIES = 20;
+const PAUSE_MS = 500;
+
+async function onceFree<T>(ask: () => Promise<T>, signal: AbortSignal): Promise<T> {
+  for (let tries = 1; ; tries += 1)
+    try {
+      return await ask();
+    } catch (error) {
+      const busy = isProblem(error) && error.code === 'upload_under_way';
+      if (!busy || tries === TRIES || signal.aborted) throw error;
+      await new Promise((resolve) => setTimeout(resolve, PAUSE_MS));
+    }
+}
 
 /** Where the reading of a file is. */
 export interface LogReading {
@@ -60,7 +76,8 @@ export function useChargeLog(id: string) {
       }));
       try {
         const onSent = (sent: number) => current({ sent });
-        const preview = await send<LogPreviewDto>('log-preview', id, log, choices, { onSent, signal: mine.signal });
+        const ask = () => send<LogPreviewDto>('log-preview', id, log, choices, { onSent, signal: mine.signal });
+        const preview = await onceFree(ask, mine.signal);
         current({ preview, choices: preview.choices, sent: null });
       } catch (error) {
         if (!mine.signal.aborted) current({ sent: null, error });

@@ -11,7 +11,7 @@ import type { ReadingDto } from '@/shared/contract/charge';
 import { MOST_LOG_BYTES } from '@/shared/contract/charge-log-words';
 import type { Deps, Member } from '../../deps';
 import type { ChargeReading } from '../../entities/charge-reading';
-import { conflict, invalid, type DomainError } from '../../errors/domain-error';
+import { conflict, DomainError, invalid } from '../../errors/domain-error';
 import { fieldsOf } from '../../errors/zod-fields';
 import { insertReadings } from '../../repositories/charge-rows.repository';
 import { chargeDto } from '../charge-dto';
@@ -125,6 +125,11 @@ async function readUpload(
     const file = await loadFile(deps.dataSource.manager, member.workshopId, id);
     if (!isUnderWay(file.charge.stage)) throw notUnderWay();
     return { file, log: await readLog(upload, choicesOf(query), file, now) };
+  } catch (error) {
+    // Who leaves, or chooses otherwise meanwhile, breaks it off: no fault of the server.
+    if (upload.destroyed && !upload.readableEnded && (error as NodeJS.ErrnoException).code === 'ECONNRESET')
+      throw new DomainError(400, 'broke_off', 'The upload broke off. Send it again.');
+    throw error;
   } finally {
     busy.delete(member.personId);
     // What is left of a refused file is read and dropped, so that the answer is heard and not a broken line.

@@ -110,7 +110,7 @@ function makeReader(file: ChargeFile, choices: LogChoices, columns: ReadLog['col
     if (before !== null && at < before.at)
       return leftOut.add('back', 'Earlier than the line before. Sort the log by its time where that is wrong.', line);
     const checked = believed(values);
-    if (typeof checked === 'string') return leftOut.add(`bound ${checked.slice(0, 12)}`, checked, line);
+    if (typeof checked === 'string') return leftOut.add(checked.replace(/[\d.,]+/g, '#'), checked, line);
     const reading = { at, ...checked };
     if (before !== null && before.at === at && same(before, reading))
       return leftOut.add('twice', 'The same as the line before.', line);

@@ -200,7 +200,15 @@ describe('a log of a charge', () => {
     expect(second.body.detail).toMatch(/^Another file of yours is still on its way/);
     waiting.end('s,V\n0,7.7\n');
     expect((await first).readings).toBe(1);
+    // One that breaks off is no fault of the server, and leaves the way free.
+    const left = Object.assign(new PassThrough(), { headers: {} });
+    const broken = previewLog(bench.server.deps, who, charge.id, {}, left, bench.server.clock.now());
+    left.write('s,V\n');
+    left.destroy(Object.assign(new Error('aborted'), { code: 'ECONNRESET' }));
+    await expect(broken).rejects.toMatchObject({ status: 400, code: 'broke_off' });
     expect((await preview(halfHour())).readings).toBe(1801);
+    const stranger = bench.server.agentFor('technician', bench.server.other);
+    await stranger.post(`/api/charges/${charge.id}/log-file`).expect(404);
     await bench
       .as('technician')
       .post(`/api/charges/${charge.id}/stop`, { reason: 'Too warm.' })
