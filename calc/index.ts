@@ -44,6 +44,15 @@ export { soonestTerminals, type SoonestTerminals } from './plan/soonest-terminal
 export { withTimeFactor } from './plan/time-factor';
 export { judgeCheck } from './plan/judge-check';
 export { reckonCharge } from './live/reckon-charge';
+export {
+  startThinning,
+  STORED_THINNING,
+  thinForStoring,
+  widerThinning,
+  type StoredPoint,
+  type Thinning,
+  type ThinningRule,
+} from './live/stored-thinning';
 export { quickEstimate, type QuickEstimate, type QuickNumbers, type QuickWay } from './plan/estimate';
 
 // The pack: its readings, what they say, and what balancing will do.

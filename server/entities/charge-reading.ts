@@ -56,7 +56,7 @@ export class ChargeReading {
   personId!: string;
 
   @Column(textColumn('source'))
-  source!: 'typed';
+  source!: 'typed' | 'file';
 
   @Column(optionalIdColumn('replaces_id'))
   replacesId!: string | null;

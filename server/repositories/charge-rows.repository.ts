@@ -94,6 +94,11 @@ export async function updateRun(
 export async function insertReading(manager: EntityManager, reading: ChargeReading): Promise<void> {
   await manager.insert(ChargeReading, reading);
 }
+/** Many at once, a few hundred to a statement: SQLite takes only so many values in one. */
+export async function insertReadings(manager: EntityManager, readings: readonly ChargeReading[]): Promise<void> {
+  for (let from = 0; from < readings.length; from += 500)
+    await manager.insert(ChargeReading, readings.slice(from, from + 500));
+}
 export async function updateReading(
   manager: EntityManager,
   workshopId: string,

@@ -16,8 +16,10 @@ import {
   startChargeSchema,
   stopSchema,
 } from '@/shared/contract/charge';
+import { logQuerySchema } from '@/shared/contract/charge-log';
 import { paperQuerySchema } from '@/shared/contract/papers';
 import { keepPlanSchema } from '@/shared/contract/plan';
+import { previewLog, takeLog } from '../services/charge-log/charge-log.service';
 import { correctReading, logReading } from '../services/charge-readings.service';
 import { charge, charges } from '../services/charges.service';
 import { checkAfterRest, fitCharge, handOver, shelveCharge } from '../services/finish-charge.service';
@@ -165,6 +167,24 @@ export const chargesRoutes: RoutesModule = (route) => {
     body: correctReadingSchema,
     handle: ({ deps, member, params, body, now }) =>
       correctReading(deps, member, idOf(params), params.readingId ?? '', body, now),
+  });
+  // The file is the body itself, read as it comes in. The same one twice adds nothing, so that it needs no key.
+  route({
+    method: 'post',
+    path: '/charges/:id/log-preview',
+    policy: run,
+    query: logQuerySchema,
+    limit: 'logFile',
+    handle: ({ deps, member, params, query, request, now }) =>
+      previewLog(deps, member, idOf(params), query, request, now),
+  });
+  route({
+    method: 'post',
+    path: '/charges/:id/log-file',
+    policy: run,
+    query: logQuerySchema,
+    limit: 'logFile',
+    handle: ({ deps, member, params, query, request, now }) => takeLog(deps, member, idOf(params), query, request, now),
   });
   route({
     method: 'post',

@@ -14,6 +14,8 @@ const addressRules = {
   estimate: { points: 120, durationS: 60 },
   /** Papers are drawn anew for every question. */
   papers: { points: 60, durationS: 60 },
+  /** A log of a charge may be 64 MB, and is read anew with every change of its columns. */
+  logFile: { points: 60, durationS: 600 },
   /** A copy of all data reads and writes all of it. */
   backup: { points: 6, durationS: 600 },
   createWorkshop: { points: 5, durationS: 3600 },

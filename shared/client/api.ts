@@ -12,8 +12,8 @@ import { recall, remember } from './storage';
 export interface CallOptions {
   query?: Record<string, string | number | boolean | null | undefined>;
   body?: unknown;
-  /** A form with a file, in place of a JSON body. */
-  form?: FormData;
+  /** A form with a file, or a file alone, in place of a JSON body. */
+  form?: FormData | Blob;
   /** Hears how much of the form has gone out, as a share. */
   onSent?: (share: number) => void;
   /** Revision of what is changed; goes out as If-Match. */
@@ -135,8 +135,9 @@ export function makeApi(env: ApiEnvironment) {
   return {
     get: <T>(path: string, options?: CallOptions) => call<T>('GET', path, options),
     post: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('POST', path, { ...options, body }),
-    /** A file, as a form. */
-    upload: <T>(path: string, form: FormData, options?: CallOptions) => call<T>('POST', path, { ...options, form }),
+    /** A file, as a form or alone. */
+    upload: <T>(path: string, form: FormData | Blob, options?: CallOptions) =>
+      call<T>('POST', path, { ...options, form }),
     patch: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PATCH', path, { ...options, body }),
     put: <T>(path: string, body: unknown, options?: CallOptions) => call<T>('PUT', path, { ...options, body }),
     delete: <T = void>(path: string, options?: CallOptions) => call<T>('DELETE', path, options),

@@ -22,5 +22,5 @@ export const sendForm = (input: string, init: RequestInit, onSent: (share: numbe
       resolve(new Response(request.responseText, { status: request.status, headers }));
     });
     init.signal?.addEventListener('abort', () => request.abort());
-    request.send(init.body as FormData);
+    request.send(init.body as FormData | Blob);
   });

@@ -229,7 +229,7 @@ export interface ReadingDto {
   /** Where the volts between the clips were read; null: nobody has said, or none were. */
   takenAt: 'supply' | 'module' | null;
   by: PersonRef;
-  source: 'typed';
+  source: 'typed' | 'file';
   /** Not null: this one is replaced by that one. */
   replacedBy: string | null;
   replaces: string | null;

@@ -15,6 +15,7 @@ const screens = [
   '/plan?spare=demo-spare-S-0391&target=3.912',
   '/charges/R-2411',
   '/charges/R-2411/log',
+  '/charges/R-2411/log-file',
   '/charges/R-2406',
   '/charges/R-2415',
   '/charges/R-2412',

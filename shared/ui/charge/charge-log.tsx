@@ -20,11 +20,12 @@ const readingWords = (reading: ReadingDto, marks: Parameters<typeof clipVolts>[1
 
 /** With what it was read and where the clips were: 'with Hand meter 1 at the module', 'off the charger’s display'. */
 export function takenWords(
-  reading: Pick<ReadingDto, 'meterId' | 'takenAt'>,
+  reading: Pick<ReadingDto, 'meterId' | 'takenAt'> & { source?: ReadingDto['source'] },
   meters: readonly { id: string; name: string }[],
 ): string {
   const { meterId, takenAt } = reading;
   const place = takenAt === null ? '' : ` at the ${takenAt}`;
+  if (reading.source === 'file') return `out of a file${takenAt === null ? '' : `, volts${place}`}`;
   if (meterId === null) return `off the charger’s display${takenAt === null ? '' : `, sensed${place}`}`;
   return `with ${meters.find((meter) => meter.id === meterId)?.name ?? 'a meter that is gone'}${place}`;
 }

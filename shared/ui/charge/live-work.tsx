@@ -77,14 +77,19 @@ export function LiveWork(props: LiveScreenProps) {
 /** The module is in the pack or on the shelf. A stopped one still lies on the bench. */
 const isOver = ({ stage }: ChargeDto): boolean => stage === 'fitted' || stage === 'shelved';
 
-/** All readings, with the way to put one right. */
+/** All readings, with the way to put one right, and to a file of them. */
 export const LiveReadings = ({ charge, at, meters, onGo }: LiveScreenProps) => (
-  <ReadingLog
-    charge={charge}
-    now={at.now}
-    meters={meters}
-    onCorrect={(reading) => onGo(`/charges/${charge.id}/log?correct=${reading.id}`)}
-  />
+  <>
+    <ReadingLog
+      charge={charge}
+      now={at.now}
+      meters={meters}
+      onCorrect={(reading) => onGo(`/charges/${charge.id}/log?correct=${reading.id}`)}
+    />
+    {isUnderWay(charge) ? (
+      <Link title="Add a logger’s file" onPress={() => onGo(`/charges/${charge.id}/log-file`)} />
+    ) : null}
+  </>
 );
 
 /** By when a ready module is to be fitted. */

@@ -79,6 +79,17 @@ function within(trace: readonly TracePlanPoint[], fromS: number, toS: number): {
 const path = (points: readonly (readonly [number, number])[]) =>
   points.map(([x, y], i) => `${i ? 'L' : 'M'}${n(x)} ${n(y)}`).join('');
 
+/** One dot a pixel: a log has more readings than the picture has room for. An odd one is never covered. */
+function apart(dots: PictureDrawing['dots']): PictureDrawing['dots'] {
+  const there = new Map<string, PictureDrawing['dots'][number]>();
+  for (const dot of dots) {
+    const pixel = `${Math.round(dot.x)} ${Math.round(dot.y)}`;
+    const before = there.get(pixel);
+    if (before === undefined || (dot.odd && !before.odd)) there.set(pixel, dot);
+  }
+  return [...there.values()];
+}
+
 /** Volts above (clips solid, rest dashed, band as tint, target as notch line), amps below with the comb. */
 export function layoutPicture(input: PictureInput): PictureDrawing {
   const { trace, segments, band, targetVolts, readings = [], width, voltsHeight, ampsHeight } = input;
@@ -137,11 +148,13 @@ export function layoutPicture(input: PictureInput): PictureDrawing {
       ({ x: at, height }) => `M${n(at)} ${baseY}v${n(-ampsHeight * height)}`,
     ),
     likely: `M${n(x(band.p50))} ${baseY}V${n(voltsHeight + between)}`,
-    dots: readings.flatMap((reading) => [
-      ...(reading.volts == null ? [] : [{ x: n(x(reading.s)), y: n(y(reading.volts)), odd: reading.odd === true }]),
-      ...(reading.amps == null
-        ? []
-        : [{ x: n(x(reading.s)), y: n(yAmps(Math.abs(reading.amps))), odd: reading.odd === true }]),
-    ]),
+    dots: apart(
+      readings.flatMap((reading) => [
+        ...(reading.volts == null ? [] : [{ x: n(x(reading.s)), y: n(y(reading.volts)), odd: reading.odd === true }]),
+        ...(reading.amps == null
+          ? []
+          : [{ x: n(x(reading.s)), y: n(yAmps(Math.abs(reading.amps))), odd: reading.odd === true }]),
+      ]),
+    ),
   };
 }

@@ -195,6 +195,7 @@ describe('who may', () => {
 
 /** What the furnished workshop cannot be in the state for; and the test, under tests/server, that sees its 2xx. */
 const takenElsewhere = {
+  'POST /api/charges/:id/log-file': 'charges/log-file.test.ts',
   'GET /metrics': 'operations/status.test.ts',
   'POST /api/demo/sign-in': 'foundation/front-door.test.ts',
   'POST /api/session/refresh': 'foundation/sessions.test.ts',

@@ -221,6 +221,8 @@ export const routeFixtures: Record<string, RouteFixture> = {
   'POST /api/charges/:id/readings': technician(
     charge((f) => ({ terminalVolts: '7.61', amps: '20', celsius: '22', meterId: f.meterId })),
   ),
+  'POST /api/charges/:id/log-preview': technician(charge()),
+  'POST /api/charges/:id/log-file': technician(charge()),
   'PATCH /api/charges/:id/readings/:readingId': technician((f) => ({
     params: { id: f.chargeId, readingId: f.readingId },
     body: { terminalVolts: '7.62', amps: '20', celsius: '22', meterId: f.meterId, reason: 'Mistyped.' },

@@ -84,6 +84,17 @@ describe('charge picture', () => {
     }
   });
 
+  it('draws 3,600 readings of an hour with no two dots on one pixel, and the one odd among them', () => {
+    const readings = Array.from({ length: 3600 }, (_, s) => ({ s, volts: 3.7, amps: 20, odd: s === 1800 }));
+    const { dots } = layoutPicture({ ...input, readings });
+    const pixels = dots.map(({ x, y }) => `${Math.round(x)} ${Math.round(y)}`);
+    expect(new Set(pixels).size).toBe(dots.length);
+    // Two lines of dots, at most one for each of the 358 pixels.
+    expect(dots.length).toBeLessThanOrEqual(2 * input.width);
+    expect(dots.length).toBeGreaterThan(200);
+    expect(dots.filter(({ odd }) => odd)).toHaveLength(2);
+  });
+
   it('draws a discharge as high as a charge of the same amps', () => {
     const down = layoutPicture({ ...input, trace: trace.map((point) => ({ ...point, amps: -point.amps })) });
     expect(down.silhouette[0]?.d).toBe(drawing.silhouette[0]?.d);
