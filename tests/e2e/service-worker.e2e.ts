@@ -1,3 +1,5 @@
+import fs from 'node:fs';
+import path from 'node:path';
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { describeInBrowser, openBrowser, visit, type Visitor } from '../support/browser';
@@ -74,6 +76,22 @@ describeInBrowser('the service worker in Chromium', () => {
     expect(call).toBe('not reached');
     await visitor.context.setOffline(false);
     await visitor.page.goto(`${server.url}/estimate`);
+  });
+
+  test('opens parts of screens that nobody has opened yet: every script of the build is answered without a connection', async () => {
+    const folder = path.join(process.cwd(), 'dist/_expo/static');
+    const scripts = fs
+      .readdirSync(folder, { recursive: true })
+      .map((name) => `/_expo/static/${String(name).split(path.sep).join('/')}`)
+      .filter((name) => name.endsWith('.js'));
+    expect(scripts.length).toBeGreaterThan(20);
+    await visitor.context.setOffline(true);
+    const unanswered = await visitor.page.evaluate(async (files) => {
+      const answers = await Promise.all(files.map((file) => fetch(file).catch(() => null)));
+      return files.filter((_, at) => !answers[at]?.ok);
+    }, scripts);
+    await visitor.context.setOffline(false);
+    expect(unanswered).toEqual([]);
   });
 
   test('waits with a new version while a page of the old one is open', async () => {
