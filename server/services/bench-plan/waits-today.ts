@@ -7,23 +7,28 @@ import { common, lengthOf, united, type Stretch } from './spans';
 import { stintSpan } from './stint-spans';
 
 /**
- * Of the hours in which repairs have waited today: used where one of a repair's people was at other work, or has taken
- * it; the rest is lost. Hours outside the workshop's are nobody's to use. Each repair counts for itself.
+ * Of the hours in which repairs have waited today: used where one of a repair's people (where nobody is on it: of its
+ * charges') was at other work or has taken it, or where somebody did in the wait of its charge; the rest is lost, as in
+ * the statistics of finished waits. Hours outside the workshop's are nobody's to use. Each repair counts for itself.
  */
 export function waitsToday(ground: BenchGround): WaitsTodayDto {
-  const { now, workshop, waits, repairs, stints } = ground;
+  const { now, workshop, waits, repairs, files, stints } = ground;
   const from = startOfDay(workshop.zone, now);
   const opening = openingOf(workshop, now);
   const hours: Stretch[] = opening === null ? [] : [opening];
   let [usedMs, lostMs] = [0, 0];
   for (const repairId of new Set(waits.map((wait) => wait.repairId))) {
-    const people = repairs.get(repairId)?.personIds ?? [];
+    const charges = files.flatMap(({ charge }) => (charge.repairId === repairId ? [charge] : []));
+    const onIt = repairs.get(repairId)?.personIds ?? [];
+    const people = onIt.length > 0 ? onIt : charges.map(({ personId }) => personId);
+    const uses = ({ personId, waitChargeId }: (typeof stints)[number]): boolean =>
+      people.includes(personId) || charges.some(({ id }) => id === waitChargeId);
     const waited = waits
       .filter((wait) => wait.repairId === repairId)
       .map(({ fromAt, toAt }) => ({ from: Math.max(from, fromAt), to: Math.min(now, toAt ?? now) }));
     const counted = common(united(waited), hours);
-    const filled = stints.filter(({ personId }) => people.includes(personId)).map((stint) => stintSpan(stint, now));
-    const used = lengthOf(common(counted, filled));
+    const filled = stints.filter(uses).map((stint) => stintSpan(stint, now));
+    const used = lengthOf(common(counted, united(filled)));
     usedMs += used;
     lostMs += lengthOf(counted) - used;
   }
