@@ -141,6 +141,7 @@ const titles: Readonly<Record<string, string>> = {
   'charges/[id]/index': 'Charge',
   'charges/[id]/checks': 'Before clipping on',
   'charges/[id]/log': 'Log a reading',
+  'charges/[id]/log-file': 'Add a logger’s file',
   'charges/[id]/check': 'Check after rest',
   'charges/[id]/label': 'Label',
 };
