@@ -1,4 +1,5 @@
 import type { Request, RequestHandler } from 'express';
+import type { Socket } from 'node:net';
 
 /** How long nothing may come of what is left of a request that is answered, ms. */
 const IDLE_MS = 2000;
@@ -12,8 +13,7 @@ const MOST_BYTES = 64 * 1024 * 1024;
  * who is still sending would see a broken line instead of the answer (RFC 9112, 9.6): what comes is read and thrown
  * away for a while. Who sends all of it keeps the connection; who dawdles or sends without end loses it.
  */
-function linger(request: Request): void {
-  const { socket } = request;
+function linger(request: Request, socket: Socket): void {
   const first = socket.bytesRead;
   const until = Date.now() + MOST_MS;
   let heard = first;
@@ -31,8 +31,10 @@ function linger(request: Request): void {
 
 /** Keeps no connection open for the rest of a request that is answered already. */
 export const closeUnread: RequestHandler = (request, response, next) => {
+  // A request that broke off has no socket any more when its answer is written.
+  const { socket } = request;
   response.once('finish', () => {
-    if (!request.complete) linger(request);
+    if (!request.complete && !socket.destroyed) linger(request, socket);
   });
   next();
 };

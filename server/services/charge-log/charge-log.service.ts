@@ -124,7 +124,9 @@ async function readUpload(
     if (Number(upload.headers['content-length'] ?? 0) > MOST_LOG_BYTES) throw tooLargeLog();
     const file = await loadFile(deps.dataSource.manager, member.workshopId, id);
     if (!isUnderWay(file.charge.stage)) throw notUnderWay();
-    return { file, log: await readLog(upload, choicesOf(query), file, now) };
+    // Left in its midst, it would be destroyed and its connection with it, and nobody would hear why it is refused.
+    const chunks = upload.iterator({ destroyOnReturn: false }) as AsyncIterable<Uint8Array>;
+    return { file, log: await readLog(chunks, choicesOf(query), file, now) };
   } catch (error) {
     // Who leaves, or chooses otherwise meanwhile, breaks it off: no fault of the server.
     if (upload.destroyed && !upload.readableEnded && (error as NodeJS.ErrnoException).code === 'ECONNRESET')

@@ -167,6 +167,19 @@ describe('a log of a charge', () => {
     expect(broken.status).toBe(400);
   });
 
+  test.each([
+    ['at once, of a small file', () => `${'x'.repeat(5000)}\n0;7,7\n`],
+    ['at once, of 3 MB', () => 'x'.repeat(5000) + '\n0;7,7;8'.repeat(400_000)],
+    ['in the midst of 4 MB', () => '0;7,7;8\n'.repeat(250_000) + 'x'.repeat(5000) + '\n0;7,7;8'.repeat(250_000)],
+  ])('that is refused %s, is told why, and the connection and the server go on', async (_when, text) => {
+    const refused = await send('log-preview', text());
+    expect([refused.status, refused.body.fields.file]).toEqual([
+      400,
+      expect.stringMatching(/^Line \d+ is longer than 4000 characters\./),
+    ]);
+    expect((await preview(halfHour())).readings).toBe(1801);
+  });
+
   test('counts from another instant, in milliseconds and milliamps, with the sign turned and in °F', async () => {
     const zeroAt = new Date(at(charge.startedAt) + 10 * minute).toISOString();
     const text = 'x,y,z,w\n0,7700,-8000,77\n60000,7701,-8000,77\n';
