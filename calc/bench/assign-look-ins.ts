@@ -45,9 +45,10 @@ export function assignLookIns(
   }
   const personOf = new Map(rounds.flatMap(({ person, mine }) => mine.map(({ id }) => [id, person.id] as const)));
   return wanted.map(({ id, atS }) => {
-    const personId = personOf.get(id) ?? null;
-    const somebodyThere = people.some((person) => isPresent(person, atS, lookInS));
-    return { lookInId: id, personId, nobody: personId !== null ? null : somebodyThere ? 'busy' : 'away' };
+    const personId = personOf.get(id);
+    if (personId !== undefined) return { lookInId: id, personId, nobody: null };
+    const nobody = people.some((person) => isPresent(person, atS, lookInS)) ? 'busy' : 'away';
+    return { lookInId: id, personId: null, nobody };
   });
 }
 

@@ -11,6 +11,7 @@ import { toInstant } from './instants';
 import { packVerdict } from './pack-numbers';
 import { presentSpans } from './presence';
 import { loadRepairFile, type RepairFile } from './repair-file';
+import { usesWaitOf } from './waits/uses-wait';
 
 interface Part extends Stretch {
   part: SeasonPart;
@@ -27,10 +28,14 @@ export async function repairSeason(deps: Deps, member: Member, id: string, now: 
   const parts = seasonParts(file, from, to);
   const open = presentSpans(workshop, null, from, to);
   const waited = united(waits.map((wait) => ({ from: wait.fromAt, to: wait.toAt ?? to })));
-  const ids = new Set(file.charges.map(({ charge }) => charge.id));
   const worked = (await listStints(manager, member.workshopId, from, to))
     .filter(({ state }) => state === 'begun' || state === 'done')
-    .filter(({ personId, waitChargeId }) => personIds.includes(personId) || ids.has(waitChargeId ?? ''))
+    .filter(
+      usesWaitOf(
+        personIds,
+        file.charges.map(({ charge }) => charge),
+      ),
+    )
     .map((stint) => stintSpan(stint, to));
   const openWaits = common(waited, open);
   const usedMs = lengthOf(common(openWaits, united(worked)));

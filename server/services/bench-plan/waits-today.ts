@@ -1,5 +1,6 @@
 /** How much of today's waiting was put to use. */
 import type { WaitsTodayDto } from '@/shared/contract/bench-plan';
+import { usesWaitOf } from '../waits/uses-wait';
 import { openingOf } from '../working-hours';
 import { startOfDay } from './days';
 import type { BenchGround } from './ground';
@@ -7,9 +8,8 @@ import { common, lengthOf, united, type Stretch } from './spans';
 import { stintSpan } from './stint-spans';
 
 /**
- * Of the hours in which repairs have waited today: used where one of a repair's people (where nobody is on it: of its
- * charges') was at other work or has taken it, or where somebody did in the wait of its charge; the rest is lost, as in
- * the statistics of finished waits. Hours outside the workshop's are nobody's to use. Each repair counts for itself.
+ * Of the hours in which repairs have waited today: used where other work was done in them or has been taken, the rest is
+ * lost. Hours outside the workshop's are nobody's to use. Each repair counts for itself.
  */
 export function waitsToday(ground: BenchGround): WaitsTodayDto {
   const { now, workshop, waits, repairs, files, stints } = ground;
@@ -19,10 +19,7 @@ export function waitsToday(ground: BenchGround): WaitsTodayDto {
   let [usedMs, lostMs] = [0, 0];
   for (const repairId of new Set(waits.map((wait) => wait.repairId))) {
     const charges = files.flatMap(({ charge }) => (charge.repairId === repairId ? [charge] : []));
-    const onIt = repairs.get(repairId)?.personIds ?? [];
-    const people = onIt.length > 0 ? onIt : charges.map(({ personId }) => personId);
-    const uses = ({ personId, waitChargeId }: (typeof stints)[number]): boolean =>
-      people.includes(personId) || charges.some(({ id }) => id === waitChargeId);
+    const uses = usesWaitOf(repairs.get(repairId)?.personIds ?? [], charges);
     const waited = waits
       .filter((wait) => wait.repairId === repairId)
       .map(({ fromAt, toAt }) => ({ from: Math.max(from, fromAt), to: Math.min(now, toAt ?? now) }));

@@ -8,6 +8,7 @@ import type { ChannelUse, PlannedNumbers, WaitedCharge } from '../../repositorie
 import { common, lengthOf, overlaps, united, type Stretch } from '../bench-plan/spans';
 import { stintSpan } from '../bench-plan/stint-spans';
 import { presentSpans } from '../presence';
+import { usesWaitOf } from './uses-wait';
 
 /** Stands in the place of an id: no charger, no channel, nobody. */
 export const NONE = 'none';
@@ -24,7 +25,7 @@ export interface WaitGround {
   bookedAt: number | null;
   /** Of its repair. */
   repairWaits: readonly Pick<RepairWait, 'fromAt' | 'toAt'>[];
-  /** Who waits: the people of its repair, else whose charge it is. */
+  /** On its repair. */
   personIds: readonly string[];
   /** Of anybody. */
   stints: readonly WorkStint[];
@@ -51,7 +52,7 @@ export function finishedWaitRow(ground: WaitGround): FinishedWait {
   const open = common(waits, presentSpans(workshop, null, from, to));
   const worked = stints
     .filter(({ state }) => state === 'begun' || state === 'done')
-    .filter((stint) => personIds.includes(stint.personId) || stint.waitChargeId === charge.id)
+    .filter(usesWaitOf(personIds, [charge]))
     .map((stint) => stintSpan(stint, to));
   const usedMs = lengthOf(common(open, united(worked)));
   const ready = DateTime.fromMillis(charge.readyAt, { zone: workshop.zone });

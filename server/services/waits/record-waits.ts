@@ -54,9 +54,8 @@ async function groundsOf(
   const people = await peopleOfRepairs(manager, workshopId, repairIds);
   const booked = await bookedInstants(manager, workshopId, repairIds);
   const grounds = charges.flatMap((charge): WaitGround[] => {
-    const { readyAt, repairId, personId } = charge;
+    const { readyAt, repairId } = charge;
     if (readyAt === null) return [];
-    const ofRepair = repairId === null ? [] : (people.get(repairId) ?? []).map((one) => one.personId);
     return [
       {
         workshop,
@@ -66,7 +65,7 @@ async function groundsOf(
         planned: planned.get(charge.id) ?? { fromVolts: null, toVolts: null, groupAh: null },
         bookedAt: repairId === null ? null : (booked.get(repairId) ?? null),
         repairWaits: repairId === null ? [] : (repairWaits.get(repairId) ?? []),
-        personIds: ofRepair.length > 0 || personId === null ? ofRepair : [personId],
+        personIds: repairId === null ? [] : (people.get(repairId) ?? []).map(({ personId }) => personId),
         stints: [],
       },
     ];

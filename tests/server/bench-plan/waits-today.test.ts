@@ -35,6 +35,9 @@ it('loses each minute of a repair’s wait but those in which its technician doe
   await crew.acted(await crew.seen(work.id), 'done');
   at(asked + 60 * minute);
   expect(await minutes()).toEqual({ used: 7, lost: 53 });
+  // The repair's own account says the same.
+  const { body } = await bench.as('foreman').get(`/api/repairs/${page.id}/season`).expect(200);
+  expect(body).toMatchObject({ usedS: 7 * 60, lostS: 53 * 60 });
 
   at(Date.parse(clock('19:00')));
   const untilClosing = (Date.parse(clock('17:00')) - asked) / minute;
