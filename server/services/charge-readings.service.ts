@@ -14,13 +14,7 @@ import { markVisit } from './charge-visit';
 import { ampsText, bare, celsiusText, cellText, clipText, clockText, listText } from './charge-words';
 import { changeCharge, type ChargeWrite } from './charge-write';
 import { newId } from './ids';
-
-/** Amps beyond this many times the planned are a slip of the pen. */
-const MOST_TIMES_PLANNED = 2;
-/** What a group can show beyond its limit while current flows, V; above it a point is in the wrong place. */
-const UNDER_CURRENT_OVER_LIMIT_VOLTS = 0.5;
-/** A supply shows a little more than it is rated for. */
-const SUPPLY_SLACK = 1.05;
+import { MOST_TIMES_PLANNED, SUPPLY_SLACK, UNDER_CURRENT_OVER_LIMIT_VOLTS } from './reading-bounds';
 
 type ReadingValues = Pick<ChargeReading, 'terminalVolts' | 'amps' | 'celsius' | 'groupVolts' | 'meterId' | 'takenAt'>;
 

@@ -1,5 +1,6 @@
 import type { ChargeFile } from '../charge-file';
 import { ampsText, celsiusText, cellText, clipText } from '../charge-words';
+import { MOST_TIMES_PLANNED, SUPPLY_SLACK, UNDER_CURRENT_OVER_LIMIT_VOLTS } from '../reading-bounds';
 
 /** What a line holds, in the core's units and signs. */
 export interface LogValues {
@@ -10,9 +11,6 @@ export interface LogValues {
 }
 
 /** As for a typed reading. */
-const MOST_TIMES_PLANNED = 2;
-const OVER_LIMIT_VOLTS = 0.5;
-const SUPPLY_SLACK = 1.05;
 const MOST_CELSIUS = 120;
 const LEAST_CELSIUS = -40;
 /** A meter's zero, as a share of the planned amps and at least in A: so much the other way is none. */
@@ -29,7 +27,8 @@ export function logBounds(file: ChargeFile): (values: LogValues) => LogValues | 
   const { module } = charge.frozen;
   const { steps } = charge.option;
   const groups = steps.some(({ way }) => way === 'terminals') ? module.groupsInSeries : 1;
-  const mostVolts = groups * (module.chargeLimitVolts + OVER_LIMIT_VOLTS);
+  const mostGroupVolts = module.chargeLimitVolts + UNDER_CURRENT_OVER_LIMIT_VOLTS;
+  const mostVolts = groups * mostGroupVolts;
   const supplies = steps.flatMap(({ channelIds }) => channelIds.map((id) => channels.get(id)?.maxVolts ?? Infinity));
   const supplyVolts = supplies.length === 0 ? Infinity : Math.max(...supplies) * SUPPLY_SLACK;
   const planned = Math.max(Math.abs(charge.option.amps), ...steps.map(({ setAmps }) => Math.abs(setAmps ?? 0)));
@@ -38,7 +37,6 @@ export function logBounds(file: ChargeFile): (values: LogValues) => LogValues | 
   const directions = new Set(steps.map(({ direction }) => direction ?? charge.direction));
   const both = directions.size > 1;
   const out = directions.has('discharge');
-  const mostGroupVolts = module.chargeLimitVolts + OVER_LIMIT_VOLTS;
 
   const ampsOf = (amps: number): number | string => {
     const size = Math.abs(amps);
