@@ -9,6 +9,7 @@ import { pushDevicesOf } from '../repositories/push-devices.repository';
 import { digestIds } from '../repositories/weekly-digest.repository';
 import { addPushDevice } from './alert-settings.service';
 import { toInstant } from './instants';
+import { letterId } from './waits/digest-letter';
 
 function outsideOf({ outside }: Deps): Outside {
   if (outside === null) throw notFound('The mailbox of the demo');
@@ -24,7 +25,7 @@ export async function mailbox(deps: Deps, member: Member): Promise<MailboxDto> {
   const { manager } = deps.dataSource;
   const { workshopId } = member;
   const alerts = await alertsById(manager, workshopId, [...new Set(sent.map(({ alertId }) => alertId))]);
-  const digests = new Set((await digestIds(manager, workshopId)).map((id) => `digest.${id}`));
+  const digests = new Set((await digestIds(manager, workshopId)).map(letterId));
   const people = await listPeople(manager, workshopId);
   const devices = await pushDevicesOf(
     manager,

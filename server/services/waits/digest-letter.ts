@@ -6,6 +6,9 @@ import { mark, sameText, type Secrets } from '../secrets';
 const escaped = (text: string): string =>
   text.replace(/[&<>"']/g, (sign) => `&#${sign.charCodeAt(0)};`).replaceAll('\u00a0', '&nbsp;');
 
+/** By what a digest's letter is known outside. */
+export const letterId = (digestId: string): string => `digest.${digestId}`;
+
 /** @param links null: the server does not know its address */
 export function digestLetter(
   { week, facts }: DigestWords,

@@ -22,7 +22,7 @@ import { workshopForPlans } from '../../repositories/workshop-for-plans.reposito
 import { newId } from '../ids';
 import { inTransaction } from '../unit-of-work';
 import { digestFacts, type WeekFigures } from './digest-facts';
-import { digestLetter, digestToken } from './digest-letter';
+import { digestLetter, digestToken, letterId } from './digest-letter';
 import { stageNames } from '@/shared/contract/wait-names';
 import { waitNames } from './wait-names';
 
@@ -94,7 +94,7 @@ export function makeWeeklyDigests(deps: DigestDeps): DueLoop {
       site === null ? null : new URL(`/api/digest/stop?token=${digestToken(deps.secrets, personId)}`, site).href;
     const waits = site === null ? null : new URL('/waits', site).href;
     const letter = digestLetter(digest.words, name, stop === null || waits === null ? null : { waits, stop });
-    const sent = await deps.ways.eMail!.sendLetter(person.email, { ...letter, id: `digest.${id}`, stopUrl: stop });
+    const sent = await deps.ways.eMail!.sendLetter(person.email, { ...letter, id: letterId(id), stopUrl: stop });
     const tries = digest.tries + 1;
     if (sent.kind === 'sent') return settle({ state: 'sent', tries, reason: null, endedAt: clock.now() });
     const { reason } = sent;
