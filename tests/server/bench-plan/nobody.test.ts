@@ -1,6 +1,7 @@
 /** Look-ins that nobody can do: R-1 runs from 10:00 and asks for one each hour, R-2 is clipped on at 13:00. */
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import type { StaffingInput } from '@/shared/contract/staffing';
+import { bytesOf } from '@/tests/support/bytes';
 import { readPdf } from '@/tests/support/pdf';
 import { hour, makeBench, running, type Bench } from '../charges/bench';
 import { clock, hoursOf, onlyTwoWork, planOf, queued, timeOf } from './day';
@@ -70,17 +71,8 @@ describe('a look-in that nobody can do', () => {
       person: null,
       nobody: { kind: 'away', because: 'The workshop is closed then.' },
     });
-    const answer = await bench
-      .as('foreman')
-      .get('/api/bench-plan/day-sheet.pdf')
-      .buffer(true)
-      .parse((response, done) => {
-        const chunks: Buffer[] = [];
-        response.on('data', (chunk: Buffer) => chunks.push(chunk));
-        response.on('end', () => done(null, Buffer.concat(chunks)));
-      })
-      .expect(200);
-    const text = (await readPdf(answer.body as Buffer))
+    const { bytes } = await bytesOf(bench.as('foreman').get('/api/bench-plan/day-sheet.pdf'));
+    const text = (await readPdf(bytes))
       .map((page) => page.text)
       .join(' ')
       .replace(/\s+/g, ' ');

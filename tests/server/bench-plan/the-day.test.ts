@@ -2,6 +2,7 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import type { MyDayDto } from '@/shared/contract/bench-plan';
 import type { ChargeDto } from '@/shared/contract/charge';
+import { bytesOf } from '@/tests/support/bytes';
 import { workForm } from '@/tests/support/benched';
 import { readPdf } from '@/tests/support/pdf';
 import { at, hour, key, makeBench, minute, running, seen, type Bench } from '../charges/bench';
@@ -218,17 +219,8 @@ describe('my day', () => {
 
   it('on paper names the charges, channels, look-ins and the standing line; a technician gets no colleague’s', async () => {
     const paper = async (role: 'technician' | 'foreman') => {
-      const answer = await bench
-        .as(role)
-        .get('/api/bench-plan/day-sheet.pdf')
-        .buffer(true)
-        .parse((response, done) => {
-          const chunks: Buffer[] = [];
-          response.on('data', (chunk: Buffer) => chunks.push(chunk));
-          response.on('end', () => done(null, Buffer.concat(chunks)));
-        })
-        .expect(200);
-      return (await readPdf(answer.body as Buffer)).map(({ text }) => text).join('\n');
+      const { bytes } = await bytesOf(bench.as(role).get('/api/bench-plan/day-sheet.pdf'));
+      return (await readPdf(bytes)).map(({ text }) => text).join('\n');
     };
     const whole = await paper('foreman');
     for (const word of [

@@ -5,6 +5,7 @@ import path from 'node:path';
 import Papa from 'papaparse';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { exportedTables } from '@/server/services/workshop-export';
+import { bytesOf } from '@/tests/support/bytes';
 import { twoHalves } from '@/tests/support/pictures';
 import { repairForm } from '@/tests/support/repaired';
 import { makeTestServer, type TestServer } from '@/tests/support/server';
@@ -26,19 +27,10 @@ beforeAll(async () => {
     .post('/api/repairs', { ...repairForm(null), vehicle: 'Of the other workshop' })
     .set('Idempotency-Key', 'book-elsewhere')
     .expect(201);
-  const answer = await server
-    .agentFor('manager')
-    .get('/api/export.zip')
-    .buffer(true)
-    .parse((response, done) => {
-      const chunks: Buffer[] = [];
-      response.on('data', (chunk: Buffer) => chunks.push(chunk));
-      response.on('end', () => done(null, Buffer.concat(chunks)));
-    })
-    .expect(200);
-  expect(answer.headers['content-disposition']).toBe('attachment; filename=bidewell-2026-06-09.zip');
+  const { bytes, headers } = await bytesOf(server.agentFor('manager').get('/api/export.zip'));
+  expect(headers['content-disposition']).toBe('attachment; filename=bidewell-2026-06-09.zip');
   folder = fs.mkdtempSync(path.join(os.tmpdir(), 'bidewell-export-'));
-  fs.writeFileSync(path.join(folder, 'all.zip'), answer.body as Buffer);
+  fs.writeFileSync(path.join(folder, 'all.zip'), bytes);
   // Another reader of the format than the one that wrote it.
   execFileSync('python3', ['-m', 'zipfile', '-e', 'all.zip', '.'], { cwd: folder });
 });
